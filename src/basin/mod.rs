@@ -1,0 +1,47 @@
+//! The basin: its elevation bands and how weather changes with elevation.
+
+mod bands;
+mod gradients;
+
+pub use bands::{Band, read_bands};
+pub use gradients::{PrecipitationGradient, TemperatureGradient};
+
+/// A basin as the engine needs it: bands from the lowest up, and the gradients that carry station weather to them.
+#[derive(Debug, Clone)]
+pub struct Basin {
+    /// Latitude of the basin, degrees, positive north.
+    pub latitude_deg: f64,
+    /// Bands, sorted from the lowest; never empty.
+    pub bands: Vec<Band>,
+    /// Change of temperature with elevation.
+    pub temperature: TemperatureGradient,
+    /// Change of precipitation with elevation.
+    pub precipitation: PrecipitationGradient,
+}
+
+impl Basin {
+    /// Total area, km2.
+    pub fn area_km2(&self) -> f64 {
+        self.bands.iter().map(|band| band.area_km2).sum()
+    }
+
+    /// Each band's share of the basin's area, from the lowest band up; the shares add up to 1.
+    pub fn shares(&self) -> Vec<f64> {
+        let total = self.area_km2();
+        self.bands.iter().map(|band| band.area_km2 / total).collect()
+    }
+
+    /// Whether the basin lies in the southern hemisphere, which sets the defaults of the seasons.
+    pub fn is_southern(&self) -> bool {
+        self.latitude_deg < 0.0
+    }
+
+    /// Basin-mean precipitation over station precipitation, by the precipitation gradient alone.
+    pub fn precipitation_ratio(&self, station_elevation_m: f64) -> f64 {
+        self.bands
+            .iter()
+            .zip(self.shares())
+            .map(|(band, share)| share * self.precipitation.factor(station_elevation_m, band.elevation_m))
+            .sum()
+    }
+}

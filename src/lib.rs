@@ -1,0 +1,16 @@
+//! Thawline: how much snow water is left, and how much earlier it melts, as a basin warms, and whether that answer
+//! stands although nobody knows which way precipitation will go.
+//!
+//! The rooms stand on floors; each knows only the floors below it. `cli` reads what was typed through `scenario`,
+//! `ensemble` runs the `snow` engine over every warming level and realization of `perturb`, `season` measures its year
+//! blocks, `findings` answers questions, `figures` and `report` turn the answers into bytes.
+#![deny(clippy::print_stdout, clippy::print_stderr)]
+
+pub mod basin;
+pub mod calendar;
+pub mod fault;
+pub mod perturb;
+pub mod snow;
+pub mod table;
+pub mod units;
+pub mod weather;

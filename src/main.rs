@@ -1,0 +1,2 @@
+//! Starts thawline.
+fn main() {}

@@ -1,0 +1,20 @@
+//! Perturbation: warming levels as monthly offsets and factors, and generators of weather that could have been.
+
+mod level;
+mod mean_change;
+mod stream;
+mod year_blocks;
+
+pub use level::{MonthlyChange, Warming};
+pub use mean_change::mean_change_factor;
+pub use stream::stream;
+pub use year_blocks::YearBlocks;
+
+use crate::weather::Series;
+
+/// Makes realizations: whole water years of station weather, one stream of random numbers each.
+pub trait Generator: Sync {
+    /// Fills `into` with realization number `realization`, the same for every warming level. Its values depend on the
+    /// seed and that number alone.
+    fn fill(&self, realization: u32, into: &mut Series);
+}

@@ -1,0 +1,59 @@
+//! `year-blocks`: whole usable water years of the record in a new order, as the stationary bootstrap of
+//! Politis & Romano (1994) takes them (method, section 8).
+
+use super::Generator;
+use super::mean_change::mean_change_factor;
+use super::stream::stream;
+use crate::weather::Series;
+use rand::RngExt;
+use rand_distr::{Distribution, StandardNormal};
+
+/// Resamples a record's water years in runs of random length, weather kept jointly and leap days kept.
+#[derive(Debug, Clone)]
+pub struct YearBlocks<'r> {
+    /// The usable years, catch-corrected.
+    pub record: &'r Series,
+    /// Seed of the study.
+    pub seed: u64,
+    /// Years in a realization.
+    pub years: usize,
+    /// Mean length of a run of consecutive years, at least 1.
+    pub mean_run_years: f64,
+    /// Assumed standard deviation of the change of mean precipitation, percent; 0 for none.
+    pub mean_change_sd_pct: f64,
+}
+
+impl Generator for YearBlocks<'_> {
+    /// Draws z of the mean change first, wanted or not, so that the order of years does not depend on it. Then, a year
+    /// at a time: with probability 1/L, and wherever the record has a gap, a new run starts at any usable year; else
+    /// the next year of the record follows, the first after the last.
+    fn fill(&self, realization: u32, into: &mut Series) {
+        let mut random = stream(self.seed, realization);
+        let draw: f64 = StandardNormal.sample(&mut random);
+        let factor = mean_change_factor(self.mean_change_sd_pct, draw);
+        into.clear();
+        let record = &self.record.years;
+        let mut last: Option<usize> = None;
+        for year in 0..self.years {
+            let starts_run = random.random::<f64>() * self.mean_run_years < 1.0;
+            let anywhere = random.random_range(0..record.len());
+            let next = last.filter(|_| !starts_run).and_then(|last| self.after(last));
+            let taken = next.unwrap_or(anywhere);
+            into.push_year(self.record, &record[taken], year > 0);
+            last = Some(taken);
+        }
+        for precipitation in &mut into.precipitation_mm {
+            *precipitation *= factor;
+        }
+    }
+}
+
+impl YearBlocks<'_> {
+    /// The year that follows in the record, circular; none at a gap.
+    fn after(&self, year: usize) -> Option<usize> {
+        match self.record.years.get(year + 1) {
+            Some(next) => next.follows.then_some(year + 1),
+            None => Some(0),
+        }
+    }
+}

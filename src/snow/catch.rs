@@ -1,0 +1,63 @@
+//! Gauge catch: what fell, from what the gauge caught (method, section 2).
+
+use super::params::PhaseRule;
+use crate::fault::{Fault, Unlikely, within};
+use crate::weather::Series;
+use serde::Serialize;
+
+/// Multipliers of what a gauge caught, for rain and for snow.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct GaugeMultiplier {
+    /// Of rain.
+    pub rain: f64,
+    /// Of snow.
+    pub snow: f64,
+}
+
+impl GaugeMultiplier {
+    /// The gauge catches all.
+    pub const NONE: Self = Self { rain: 1.0, snow: 1.0 };
+
+    /// Checks the range of both multipliers.
+    ///
+    /// # Errors
+    /// A multiplier outside 0.1 to 5.
+    pub fn check(self) -> Result<Vec<Unlikely>, Vec<Fault>> {
+        let mut faults = Vec::new();
+        let mut unlikely = Vec::new();
+        for (name, value) in [("rain", self.rain), ("snow", self.snow)] {
+            let key = format!("weather.gauge_multiplier.{name}");
+            within(
+                &mut faults,
+                &key,
+                value,
+                0.1..=5.0,
+                "",
+                "1.1 says that 10 % more fell than was caught",
+            );
+            if value < 1.0 {
+                unlikely.push(Unlikely::new(
+                    key,
+                    format!("{value} is below 1: gauges catch less than falls, unless snow blows into them"),
+                ));
+            }
+        }
+        if faults.is_empty() {
+            Ok(unlikely)
+        } else {
+            Err(faults)
+        }
+    }
+}
+
+/// Corrects a record's precipitation for catch, once and before any perturbation:
+/// `P * (f*k_snow + (1 - f)*k_rain)`, f the snow fraction at the station's own observed mean temperature.
+///
+/// Done on the observed record, warming cannot change how much water falls: a warmer day turns snow into rain and must
+/// not also shrink the day's total through the multiplier.
+pub fn correct_catch(series: &mut Series, multiplier: GaugeMultiplier, phase: PhaseRule) {
+    for (precipitation, mean_c) in series.precipitation_mm.iter_mut().zip(&series.mean_c) {
+        let snow = phase.snow_fraction(*mean_c);
+        *precipitation *= snow * multiplier.snow + (1.0 - snow) * multiplier.rain;
+    }
+}

@@ -1,0 +1,39 @@
+//! The snow: its physics, once, and the engine that steps it over many bands and levels at the same time.
+//!
+//! `phase`, `degrees`, `melt` and `step` hold the equations, as small scalar functions that read like the method;
+//! `lanes` turns a basin, its warming levels and parameters into columns of numbers; `engine` runs the equations over
+//! rows of lanes, day by day; `block` is the water year it leaves; `ledger` holds it to account.
+
+mod block;
+mod catch;
+mod degrees;
+mod engine;
+mod lanes;
+mod ledger;
+mod melt;
+mod params;
+mod phase;
+mod step;
+
+pub use block::{Detail, YearBlock};
+pub use catch::{GaugeMultiplier, correct_catch};
+pub use degrees::{diurnal_degrees, mean_degrees};
+pub use engine::{Engine, Path};
+pub use lanes::{LaneSpec, Lanes, ROW_MULTIPLE};
+pub use ledger::OpenLedger;
+pub use melt::{RAIN_MELT_PER_MM_C, degree_day_factor, potential_melt};
+pub use params::{DegreeRule, PhaseRule, RawSnow, SnowParams};
+pub use phase::{linear_snow_fraction, step_snow_fraction};
+pub use step::{Fluxes, LaneConst, LaneDay, Pack, step};
+
+/// The larger of two numbers, neither of them NaN: one instruction, where `f64::max` also orders NaN.
+#[inline(always)]
+fn larger(a: f64, b: f64) -> f64 {
+    if a > b { a } else { b }
+}
+
+/// The smaller of two numbers, neither of them NaN.
+#[inline(always)]
+fn smaller(a: f64, b: f64) -> f64 {
+    if a < b { a } else { b }
+}

@@ -1,0 +1,18 @@
+//! The weather record: from the cells of a station's file to whole, screened water years of daily weather.
+//!
+//! `columns` reads cells, `gauge` turns an accumulating gauge's readings into daily amounts, `gaps` fills short
+//! temperature gaps, `years` decides which water years can be used, `record` ties them together, and `series` is what
+//! the engine and the generators read.
+
+mod columns;
+mod gaps;
+mod gauge;
+mod record;
+mod series;
+mod years;
+
+pub use columns::{Columns, Gauge, PrecipitationColumn, Reading, TemperatureColumn, TemperatureColumns};
+pub use gauge::GaugeCount;
+pub use record::{Counts, Record, read};
+pub use series::{Series, YearSpan, YearView};
+pub use years::{Limits, SkippedYear, Why};

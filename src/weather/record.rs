@@ -1,0 +1,187 @@
+//! The station's record: read, made daily, filled and screened.
+
+use super::columns::{Columns, Gauge, TemperatureColumns, read_days};
+use super::gaps;
+use super::gauge::{GaugeCount, daily_amounts};
+use super::series::Series;
+use super::years::{Limits, Screening, SkippedYear};
+use crate::calendar::{MonthDay, WaterYearStart, date_of};
+use crate::fault::Fault;
+use chrono::NaiveDate;
+use serde::Serialize;
+
+/// What was counted while the record was read.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct Counts {
+    /// First and last day of the file.
+    pub first: NaiveDate,
+    /// Last day.
+    pub last: NaiveDate,
+    /// Days from the first to the last.
+    pub days: usize,
+    /// Dates in between without a line.
+    pub absent_days: usize,
+    /// Days without a full pair of temperatures.
+    pub temperature_missing_days: usize,
+    /// Days on which the minimum stood above the maximum; both are taken as missing.
+    pub crossed_temperature_days: usize,
+    /// Days of the years in use whose temperatures are interpolated.
+    pub interpolated_days: usize,
+    /// Days without precipitation.
+    pub precipitation_missing_days: usize,
+    /// Days of the years in use that run with no precipitation because it is missing.
+    pub dry_for_want_of_data_days: usize,
+    /// What the accumulating gauge did, if it is one.
+    pub gauge: Option<GaugeCount>,
+}
+
+/// A station's record: usable water years, those left out, and what was counted on the way.
+#[derive(Debug, Clone)]
+pub struct Record {
+    /// The usable water years as measured, before any gauge catch; a year after a gap starts bare.
+    pub series: Series,
+    /// Water years left out.
+    pub skipped: Vec<SkippedYear>,
+    /// Counts.
+    pub counts: Counts,
+    /// Whether the record has daily minima and maxima.
+    pub has_daily_range: bool,
+}
+
+/// Reads a station's file and makes whole water years of it.
+///
+/// `survey` ends the cool season, for the screening of season means. `file` names the file in faults.
+///
+/// # Errors
+/// Every fault of the file (see the columns), and a record in which no water year can be used.
+pub fn read(
+    file: &str,
+    text: &str,
+    columns: &Columns,
+    start: WaterYearStart,
+    survey: MonthDay,
+    limits: Limits,
+) -> Result<Record, Vec<Fault>> {
+    let mut days = read_days(file, text, columns)?;
+    let crossed = uncross(&mut days.tmin_c, &mut days.tmax_c);
+    let (amounts, gauge) = match columns.precipitation.gauge {
+        Gauge::Daily => (days.gauge_mm, None),
+        Gauge::Accumulating {
+            reading,
+            reset_tolerance_mm,
+        } => {
+            let is_first_day = |day: usize| {
+                let date = date_of(days.first, day + 1);
+                start.first_day(start.water_year_of(date)) == date
+            };
+            let (amounts, count) = daily_amounts(&days.gauge_mm, reading, reset_tolerance_mm, is_first_day);
+            (amounts, Some(count))
+        }
+    };
+    let no_temperature: Vec<bool> = days
+        .tmin_c
+        .iter()
+        .zip(&days.tmax_c)
+        .map(|(tmin, tmax)| tmin.is_none() || tmax.is_none())
+        .collect();
+    let is_missing: Vec<bool> = no_temperature
+        .iter()
+        .zip(&amounts)
+        .map(|(missing, amount)| *missing || amount.is_none())
+        .collect();
+    let (tmin_c, tmax_c, open_gaps) = gaps::fill(&days.tmin_c, &days.tmax_c, limits.temperature_gap_days);
+    let mean_c: Vec<f64> = tmin_c
+        .iter()
+        .zip(&tmax_c)
+        .map(|(tmin, tmax)| (tmin + tmax) / 2.0)
+        .collect();
+
+    let screening = Screening {
+        first: days.first,
+        mean_c: &mean_c,
+        is_missing: &is_missing,
+        open_gaps: &open_gaps,
+        start,
+        survey,
+        limits,
+    };
+    let (usable, skipped) = screening.sort_years();
+    if usable.is_empty() {
+        return Err(vec![nothing_usable(file, &skipped)]);
+    }
+
+    let mut series = Series::default();
+    let mut counts = Counts {
+        first: days.first,
+        last: date_of(days.first, mean_c.len()),
+        days: mean_c.len(),
+        absent_days: days.absent_days,
+        temperature_missing_days: no_temperature.iter().filter(|missing| **missing).count(),
+        crossed_temperature_days: crossed,
+        interpolated_days: 0,
+        precipitation_missing_days: amounts.iter().filter(|amount| amount.is_none()).count(),
+        dry_for_want_of_data_days: 0,
+        gauge,
+    };
+    let mut last_year = None;
+    for year in &usable {
+        let range = year.first_index..year.first_index + year.days;
+        counts.interpolated_days += no_temperature[range.clone()]
+            .iter()
+            .filter(|missing| **missing)
+            .count();
+        counts.dry_for_want_of_data_days += amounts[range.clone()]
+            .iter()
+            .filter(|amount| amount.is_none())
+            .count();
+        let weather = range.map(|day| (tmin_c[day], tmax_c[day], amounts[day].unwrap_or(0.0)));
+        let follows = last_year == Some(year.water_year - 1);
+        series.push_days(
+            year.water_year,
+            start.first_day(year.water_year),
+            follows,
+            weather,
+        );
+        last_year = Some(year.water_year);
+    }
+    let has_daily_range = matches!(columns.temperature, TemperatureColumns::Extremes { .. });
+    Ok(Record {
+        series,
+        skipped,
+        counts,
+        has_daily_range,
+    })
+}
+
+/// A minimum above the maximum cannot be: takes both as missing and counts the days.
+fn uncross(tmin_c: &mut [Option<f64>], tmax_c: &mut [Option<f64>]) -> usize {
+    let mut crossed = 0;
+    for (tmin, tmax) in tmin_c.iter_mut().zip(tmax_c) {
+        if let (Some(low), Some(high)) = (*tmin, *tmax)
+            && low > high
+        {
+            (*tmin, *tmax) = (None, None);
+            crossed += 1;
+        }
+    }
+    crossed
+}
+
+fn nothing_usable(file: &str, skipped: &[SkippedYear]) -> Fault {
+    let mut found = String::from("no water year that can be used");
+    for year in skipped.iter().take(5) {
+        let why: Vec<String> = year.why.iter().map(ToString::to_string).collect();
+        found += &format!("; {}: {}", year.water_year, why.join(", "));
+    }
+    if skipped.len() > 5 {
+        found += &format!("; and {} more", skipped.len() - 5);
+    }
+    Fault {
+        place: crate::fault::Place::File(file.to_owned()),
+        found,
+        expected: "at least one whole water year of temperature and precipitation".to_owned(),
+        mend: "check units, missing marks and 'water_year_starts'; the limits temperature_gap_days and \
+               missing_days_allowed stand in [weather]"
+            .to_owned(),
+    }
+}
