@@ -8,6 +8,7 @@
 
 pub mod basin;
 pub mod calendar;
+pub mod demo;
 pub mod fault;
 pub mod perturb;
 pub mod snow;
