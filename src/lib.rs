@@ -8,8 +8,10 @@
 
 pub mod basin;
 pub mod calendar;
+pub mod ensemble;
 pub mod fault;
 pub mod perturb;
+pub mod season;
 pub mod snow;
 pub mod table;
 pub mod units;
