@@ -9,8 +9,11 @@
 pub mod basin;
 pub mod calendar;
 pub mod demo;
+pub mod ensemble;
 pub mod fault;
+pub mod findings;
 pub mod perturb;
+pub mod season;
 pub mod snow;
 pub mod table;
 pub mod units;

@@ -12,7 +12,7 @@ pub const PLACE: Place = Place {
     band_height_m: 200,
     band_areas_km2: &[24.0, 47.0, 72.0, 94.0, 102.0, 93.0, 75.0, 52.0, 30.0, 11.0],
     climate: Climate {
-        seed: 5,
+        seed: 14,
         mean_c: Swing::between(-2.0, 17.5),
         residual_sd_c: Swing::between(4.2, 2.6),
         residual_lag1: 0.7,
@@ -31,8 +31,8 @@ pub const PLACE: Place = Place {
         year_to_year: YearToYear {
             wetness_lag1: 0.25,
             wetness_weight: Swing::between(1.0, 0.2),
-            wet_day_log_odds: 0.25,
-            amount_log_sd: 0.18,
+            wet_day_log_odds: 0.20,
+            amount_log_sd: 0.12,
             warmth_sd_c: 0.6,
         },
     },

@@ -109,6 +109,11 @@ impl Lanes {
         self.mixes.len()
     }
 
+    /// Column of the first basin mean in a year block; the others follow in the order of their groups.
+    pub fn first_mix_column(&self) -> usize {
+        self.width
+    }
+
     /// A basin mean of a row of lanes: the shares' sum, taken in the order of the lanes.
     pub fn mix(&self, mix: usize, row: &[f64]) -> f64 {
         self.mixes[mix].of(row)

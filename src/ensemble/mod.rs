@@ -1,0 +1,10 @@
+//! Run many: every realization under every warming level, on as many threads as there are.
+
+mod realization;
+mod run;
+mod seasons;
+mod watch;
+
+pub use run::{Halt, Plan, run};
+pub use seasons::Seasons;
+pub use watch::{Silent, Watch};

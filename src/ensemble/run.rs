@@ -1,0 +1,68 @@
+//! The run: realizations over threads, results in the order of their numbers.
+
+use super::realization::Workshop;
+use super::seasons::Seasons;
+use super::watch::Watch;
+use crate::perturb::Generator;
+use crate::season::Measures;
+use crate::snow::{Lanes, OpenLedger, Path};
+use rayon::prelude::*;
+use thiserror::Error;
+
+/// What is to be run.
+pub struct Plan<'a> {
+    /// Every band at every level, a group of lanes and a basin mean for each level.
+    pub lanes: &'a Lanes,
+    /// How many levels.
+    pub levels: usize,
+    /// The reference among them.
+    pub reference: usize,
+    /// Bands of a level.
+    pub bands: usize,
+    /// What is measured.
+    pub measures: &'a Measures,
+    /// Makes the weather.
+    pub generator: &'a dyn Generator,
+    /// How many realizations.
+    pub realizations: u32,
+    /// Compiled form of the engine's row passes.
+    pub path: Path,
+}
+
+/// Why a run has no result.
+#[derive(Debug, Clone, Copy, PartialEq, Error)]
+pub enum Halt {
+    /// It was asked to stop.
+    #[error("stopped")]
+    Stopped,
+    /// Water was lost or made: a fault of the engine.
+    #[error(transparent)]
+    Ledger(#[from] OpenLedger),
+}
+
+/// Runs every realization under every level, on the threads of the current rayon pool.
+///
+/// Each realization depends on its number alone and results are put together in that order, so that any number of
+/// threads gives the same bits. Memory: one engine, one year block and one realization of weather a thread, beside what
+/// [`Seasons`] keeps.
+///
+/// # Errors
+/// A ledger that does not close, or `watch` wanting to stop.
+pub fn run(plan: &Plan<'_>, watch: &dyn Watch) -> Result<Seasons, Halt> {
+    watch.begins(plan.realizations);
+    let kept = (0..plan.realizations)
+        .into_par_iter()
+        .map_init(
+            || Workshop::new(plan),
+            |workshop, number| {
+                if watch.wants_stop() {
+                    return Err(Halt::Stopped);
+                }
+                let kept = workshop.run(number)?;
+                watch.realization_done();
+                Ok(kept)
+            },
+        )
+        .collect::<Result<Vec<_>, Halt>>()?;
+    Ok(Seasons::gather(plan, kept))
+}

@@ -1,0 +1,95 @@
+//! When the snow melts: dates of net melt, half-gone day, melt-out.
+
+use super::rows;
+use super::{BARE_MM, BASIN_MELT_OUT_SHARE, LEAST_MELT_MM, LEAST_PEAK_MM};
+use super::{Measure, NONE, NOT_GONE, Peaks, Place, SeasonSettings};
+use crate::snow::YearBlock;
+
+const MELT_SHARES: [f64; 3] = [0.1, 0.5, 0.9];
+
+pub(super) fn list(_: &SeasonSettings) -> Vec<Measure> {
+    vec![
+        Measure::date("melt_d10_day", "day with 10 % of the net melt done"),
+        Measure::date("melt_d50_day", "day with half of the net melt done"),
+        Measure::date("melt_d90_day", "day with 90 % of the net melt done"),
+        Measure::date("half_gone_day", "half-gone day"),
+        Measure::date("melt_out_day", "melt-out"),
+        Measure {
+            place: Place::Basin,
+            ..Measure::date("last_snow_day", "last day with snow")
+        },
+    ]
+}
+
+/// Takes the family's measures; accumulates the block's net melt in place.
+pub(super) fn take(block: &mut YearBlock, peaks: &Peaks, _: &SeasonSettings, into: &mut [f64]) {
+    let (width, days) = (block.width, block.days);
+    let mut total = vec![0.0; width];
+    let mut reached = vec![0.0; width];
+    rows::accumulate(&mut block.net_melt_mm[..days * width], &mut total, &mut reached);
+    for column in 0..width {
+        let mut set = |measure: usize, value: f64| into[measure * width + column] = value;
+        let has_timing = peaks.swe_mm[column] >= LEAST_PEAK_MM;
+        let has_melt = has_timing && total[column] >= LEAST_MELT_MM;
+        for (measure, share) in MELT_SHARES.into_iter().enumerate() {
+            let day = if has_melt {
+                first_day_with(block, column, share * total[column])
+            } else {
+                NONE
+            };
+            set(measure, day);
+        }
+        let [half_gone, melt_out, last_snow] = if has_timing {
+            departure(block, peaks, column)
+        } else {
+            [NONE; 3]
+        };
+        set(3, half_gone);
+        set(4, melt_out);
+        set(5, last_snow);
+    }
+}
+
+/// Whether a column's snow stays through the year's end: it never melts out after its peak.
+pub fn keeps_snow(block: &YearBlock, column: usize) -> bool {
+    let swe = |day: usize| block.swe_mm[day * block.width + column];
+    let mut peak_day = 0;
+    for day in 1..block.days {
+        if swe(day) > swe(peak_day) {
+            peak_day = day;
+        }
+    }
+    (peak_day..block.days).all(|day| swe(day) >= BARE_MM)
+}
+
+/// First day (from 1) on which the accumulated net melt of a column reaches `amount_mm`.
+fn first_day_with(block: &YearBlock, column: usize, amount_mm: f64) -> f64 {
+    let (mut low, mut high) = (0, block.days);
+    while low < high {
+        let middle = low.midpoint(high);
+        if block.net_melt_mm[middle * block.width + column] >= amount_mm {
+            high = middle;
+        } else {
+            low = middle + 1;
+        }
+    }
+    (low + 1) as f64
+}
+
+/// Half-gone day, melt-out and the last day with snow.
+fn departure(block: &YearBlock, peaks: &Peaks, column: usize) -> [f64; 3] {
+    let swe = |day: usize| block.swe_mm[(day - 1) * block.width + column];
+    let (peak, peak_day) = (peaks.swe_mm[column], peaks.day[column] as usize);
+    let half_gone = (peak_day + 1..=block.days).find(|day| swe(*day) <= peak / 2.0);
+    let is_basin = column >= block.mixes_at;
+    let is_out = |swe: f64| {
+        if is_basin {
+            swe <= BASIN_MELT_OUT_SHARE * peak
+        } else {
+            swe < BARE_MM
+        }
+    };
+    let melt_out = half_gone.and_then(|from| (from..=block.days).find(|day| is_out(swe(*day))));
+    let last_snow = melt_out.and_then(|_| (1..=block.days).rev().find(|day| swe(*day) >= BARE_MM));
+    [half_gone, melt_out, last_snow].map(|day| day.map_or(NOT_GONE, |day| day as f64))
+}
