@@ -12,7 +12,7 @@ pub const PLACE: Place = Place {
     band_height_m: 150,
     band_areas_km2: &[9.0, 21.0, 36.0, 47.0, 51.0, 44.0, 31.0, 17.0, 6.0],
     climate: Climate {
-        seed: 14,
+        seed: 12,
         mean_c: Swing::between(-11.0, 12.0),
         residual_sd_c: Swing::between(4.7, 2.5),
         residual_lag1: 0.68,

@@ -13,7 +13,7 @@ const END: (i32, u32, u32) = (2024, 10, 1);
 /// The daily weather of a place's station as a text table. A cell that was not measured is empty.
 pub fn table(place: &Place) -> String {
     let mut text = format!(
-        "# {station} station, {elevation} m, above {basin}: INVENTED for a demo by a random weather generator\n\
+        "# {station} station, {elevation} m, in the basin of {basin}: INVENTED for a demo by a random weather generator\n\
          # no such station exists and nothing here was measured; do not use these numbers for anything real\n\
          # daily minimum and maximum in degC, daily precipitation as caught by the gauge in mm, empty: not measured\n\
          date,tmin_c,tmax_c,precip_mm\n",
