@@ -12,6 +12,7 @@ pub mod cli;
 pub mod demo;
 pub mod ensemble;
 pub mod fault;
+pub mod figures;
 pub mod findings;
 pub mod perturb;
 pub mod report;

@@ -1,5 +1,7 @@
 //! How temperature and precipitation change with elevation (method, section 4).
 
+use serde::Serialize;
+
 /// Temperature gradient by month, degC per km, negative where it is colder higher up; daily minima and maxima may
 /// have gradients of their own.
 #[derive(Debug, Clone, PartialEq)]
@@ -21,7 +23,7 @@ impl TemperatureGradient {
 }
 
 /// Precipitation gradient: linear in elevation, a share of the station's precipitation per 100 m.
-#[derive(Debug, Clone, Copy, PartialEq)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct PrecipitationGradient {
     /// Percent of the station's precipitation per 100 m.
     pct_per_100m: f64,

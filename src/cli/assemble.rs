@@ -123,6 +123,17 @@ pub(super) fn input_failure(faults: &[Fault], file: &str, text: &str, is_coloure
 }
 
 impl Ready {
+    /// Mean yearly precipitation at the station, corrected for catch, mm.
+    pub fn mean_precipitation_mm(&self) -> f64 {
+        self.weather.precipitation_mm.iter().sum::<f64>() / self.weather.years.len() as f64
+    }
+
+    /// Basin-mean over station precipitation.
+    pub fn precipitation_ratio(&self) -> f64 {
+        self.basin
+            .precipitation_ratio(self.scenario.weather.station_elevation_m)
+    }
+
     /// Lanes of every band under each change, and a basin mean for each.
     pub fn lanes(&self, changes: &[MonthlyChange]) -> Lanes {
         let shares = self.basin.shares();

@@ -7,6 +7,9 @@ mod daily;
 mod failure;
 mod input;
 mod output;
+mod progress;
+mod start;
+mod study;
 
 pub use failure::{Failure, status};
 
@@ -31,9 +34,10 @@ pub fn run() -> u8 {
     };
     let shared = arguments.shared;
     let result = match arguments.command {
+        Command::Study { scenario } => study::run(&scenario, &shared),
         Command::Daily { scenario } => daily::run(&scenario, &shared),
         Command::Check { scenario } => check::run(&scenario, &shared),
-        _ => return 1,
+        Command::Start { folder } => start::run(&folder, &shared),
     };
     match result {
         Ok(()) => status::DONE,

@@ -187,90 +187,118 @@ fn of_band(seasons: &Seasons, band: usize, at: usize) -> Asked<'_> {
     }
 }
 
+/// The reference as every level is held against it.
+struct Reference {
+    periods: Vec<f64>,
+    spread: Option<Spread>,
+    /// The spread's quantiles in every resample.
+    spreads: Vec<Option<[f64; 3]>>,
+    years: Option<Ranked>,
+}
+
 impl Asked<'_> {
     fn find(&self, questions: &Questions<'_>, resamples: &Resamples) -> MeasureFindings {
-        let reference: Vec<f64> = self.periods.row(questions.reference).to_vec();
-        let spread = Spread::of(&reference);
+        let periods: Vec<f64> = self.periods.row(questions.reference).to_vec();
+        let reference = Reference {
+            spread: Spread::of(&periods),
+            spreads: Spread::resampled(&periods, resamples),
+            years: self.ranked_years(questions.reference),
+            periods,
+        };
         let levels: Vec<LevelFindings> = (0..questions.levels_c.len())
-            .map(|level| self.find_level(level, questions, &reference, spread.as_ref(), resamples))
+            .map(|level| {
+                let found = self.find_level(level, questions.levels_c[level]);
+                if level == questions.reference {
+                    found
+                } else {
+                    self.compare(found, level, &reference, resamples)
+                }
+            })
             .collect();
         let warmer: Vec<(f64, Option<f64>)> = levels[questions.reference + 1..]
             .iter()
             .map(|level| (level.level_c, level.signal_to_spread.map(|ratio| ratio.value)))
             .collect();
-        let weather_spread = self.years.and_then(|years| {
-            Spread::of(
-                &years
-                    .index_axis(Axis(0), questions.reference)
-                    .iter()
-                    .copied()
-                    .collect::<Vec<_>>(),
-            )
-        });
+        let single_years = reference.years.as_ref();
         MeasureFindings {
             measure: self.measure.clone(),
-            precipitation_spread: spread,
-            weather_spread,
+            precipitation_spread: reference.spread,
+            weather_spread: single_years.and_then(|years| {
+                Spread::of(&years.values().iter().map(|(value, _)| *value).collect::<Vec<_>>())
+            }),
             outweighs: crossing(questions.levels_c[questions.reference], &warmer),
             levels,
         }
     }
 
-    fn find_level(
-        &self,
-        level: usize,
-        questions: &Questions<'_>,
-        reference: &[f64],
-        spread: Option<&Spread>,
-        resamples: &Resamples,
-    ) -> LevelFindings {
-        let warmed: Vec<f64> = self.periods.row(level).to_vec();
-        let is_reference = level == questions.reference;
-        let shift = if is_reference {
-            None
-        } else {
-            Shift::of(reference, &warmed, resamples)
-        };
-        let median_shift = shift.map(|shift| shift.median.value);
-        let years = |level: usize| {
-            self.years.map(|years| {
-                let years = years.index_axis_move(Axis(0), level);
-                Ranked::new(
-                    years
-                        .indexed_iter()
-                        .map(|((realization, _), value)| (*value, realization)),
-                )
-            })
-        };
+    fn ranked_years(&self, level: usize) -> Option<Ranked> {
+        let years = self.years?.index_axis_move(Axis(0), level);
+        Some(Ranked::new(
+            years
+                .indexed_iter()
+                .map(|((realization, _), value)| (*value, realization)),
+        ))
+    }
+
+    /// What a level is by itself.
+    fn find_level(&self, level: usize, level_c: f64) -> LevelFindings {
         LevelFindings {
-            level_c: questions.levels_c[level],
-            periods: Distribution::of(warmed.iter().copied()),
+            level_c,
+            periods: Distribution::of(self.periods.row(level).iter().copied()),
             single_years: self
                 .years
                 .map(|years| Distribution::of(years.index_axis(Axis(0), level).iter().copied())),
             years_undefined: self.undefined[level],
-            percent_change: match (self.measure.kind, median_shift, spread) {
-                (Kind::AmountMm, Some(change), Some(spread)) => percent_change(change, spread.q50),
-                _ => None,
-            },
-            signal_to_spread: median_shift
-                .zip(spread)
-                .and_then(|(shift, spread)| signal_to_spread(reference, &warmed, shift, spread, resamples)),
-            signal_to_noise: median_shift.and_then(|_| signal_to_noise(reference, &warmed)),
-            variance_shares: median_shift
-                .and_then(|_| TwoWay::of(&[reference, &warmed]))
-                .and_then(|table| table.shares()),
-            chances: match (is_reference, years(questions.reference), years(level)) {
-                (false, Some(reference_years), Some(warmed_years)) => Some(Chances::of(
-                    reference,
-                    &warmed,
-                    reference_years,
-                    warmed_years,
-                    resamples,
-                )),
-                _ => None,
-            },
-            shift,
+            shift: None,
+            percent_change: None,
+            signal_to_spread: None,
+            signal_to_noise: None,
+            variance_shares: None,
+            chances: None,
+        }
+    }
+
+    /// What a level is against the reference.
+    fn compare(
+        &self,
+        found: LevelFindings,
+        level: usize,
+        reference: &Reference,
+        resamples: &Resamples,
+    ) -> LevelFindings {
+        let warmed: Vec<f64> = self.periods.row(level).to_vec();
+        let chances =
+            reference
+                .years
+                .as_ref()
+                .zip(self.ranked_years(level))
+                .map(|(reference_years, warmed_years)| {
+                    Chances::of(
+                        &reference.periods,
+                        &warmed,
+                        reference_years,
+                        &warmed_years,
+                        resamples,
+                    )
+                });
+        let Some((shift, shifts)) = Shift::of(&reference.periods, &warmed, resamples) else {
+            return LevelFindings { chances, ..found };
+        };
+        let median = shift.median.value;
+        let percent = |spread: Spread| percent_change(median, spread.q50);
+        LevelFindings {
+            shift: Some(shift),
+            percent_change: reference
+                .spread
+                .filter(|_| self.measure.kind == Kind::AmountMm)
+                .and_then(percent),
+            signal_to_spread: reference
+                .spread
+                .and_then(|spread| signal_to_spread(median, &spread, &shifts, &reference.spreads)),
+            signal_to_noise: signal_to_noise(&reference.periods, &warmed),
+            variance_shares: TwoWay::of(&[&reference.periods, &warmed]).and_then(|table| table.shares()),
+            chances,
+            ..found
         }
     }
 }

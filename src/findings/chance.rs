@@ -43,21 +43,15 @@ impl Chances {
     pub(super) fn of(
         reference: &[f64],
         warmed: &[f64],
-        reference_years: Ranked,
-        warmed_years: Ranked,
+        reference_years: &Ranked,
+        warmed_years: &Ranked,
         resamples: &Resamples,
     ) -> Self {
         let realizations = reference.len();
-        let below = |odds: &Odds| {
-            let value = odds.chance(&vec![1; realizations])?;
-            Some(Chance::new(
-                resamples.estimate(value, |weights| odds.chance(weights)),
-                realizations,
-            ))
-        };
+        let below = |odds: &Odds| Some(Chance::new(odds.chance()?, realizations));
         let ranked = |values: &[f64]| Ranked::new(values.iter().copied().zip(0..));
         Self {
-            period_below_reference: below(&Odds::new(ranked(reference), ranked(warmed), realizations)),
+            period_below_reference: below(&Odds::new(&ranked(reference), &ranked(warmed), realizations)),
             year_below_reference: below(&Odds::new(reference_years, warmed_years, realizations)),
             reaches_reference_median: reaches_median(reference, warmed, resamples),
         }
@@ -75,9 +69,9 @@ fn reaches_median(reference: &[f64], warmed: &[f64], resamples: &Resamples) -> O
     };
     let ranked = Ranked::new(reference.iter().copied().zip(0..));
     let value = share(&vec![1; warmed.len()], median);
-    let estimate = resamples.estimate(value, |weights| {
+    let resampled = resamples.each(|weights| {
         let [median] = ranked.quantiles(weights, [0.5])?;
         Some(share(weights, median))
     });
-    Some(Chance::new(estimate, reference.len()))
+    Some(Chance::new(Estimate::new(value, resampled), reference.len()))
 }

@@ -1,21 +1,22 @@
 //! Unpaired odds: pairs of different realizations, as if the future drew its own weather.
 
-use super::resample::Ranked;
+use super::resample::{Estimate, Ranked};
 
 /// Odds that a value of one realization lies below a reference value of *another* one.
+///
+/// With `s[i][j]` the pairs in which a warmed value of realization i lies below a reference value of j, ties half, and
+/// `p[i][j]` the number of those pairs, the chance is the sum of s over i <> j, divided by that of p.
 pub(super) struct Odds {
-    reference: Ranked,
-    warmed: Ranked,
-    /// For each realization, its score against itself: pairs below, ties half.
-    own_score: Vec<f64>,
-    /// For each realization, how many values each side has.
-    own_counts: Vec<(f64, f64)>,
+    /// For each realization i, sums over all j: of s[i][j] + s[j][i], and of p[i][j] + p[j][i].
+    both_ways: Vec<(f64, f64)>,
+    /// s[i][i] and p[i][i].
+    own: Vec<(f64, f64)>,
 }
 
 impl Odds {
-    /// `reference` and `warmed` are `(value, realization)`. Values that are none rank before every other and `not gone`
+    /// `reference` and `warmed` hold `(value, realization)`. Values that are none rank before every other and `not gone`
     /// after.
-    pub fn new(reference: Ranked, warmed: Ranked, realizations: usize) -> Self {
+    pub fn new(reference: &Ranked, warmed: &Ranked, realizations: usize) -> Self {
         let mut sides = vec![(Vec::new(), Vec::new()); realizations];
         for (value, realization) in reference.values() {
             sides[*realization].0.push(*value);
@@ -23,65 +24,69 @@ impl Odds {
         for (value, realization) in warmed.values() {
             sides[*realization].1.push(*value);
         }
-        let own_score = sides
+        let (references, warmeds) = (reference.values().len() as f64, warmed.values().len() as f64);
+        let pairs = |(reference, warmed): &(Vec<f64>, Vec<f64>)| {
+            reference.len() as f64 * warmeds + warmed.len() as f64 * references
+        };
+        let mut both_ways: Vec<(f64, f64)> = sides.iter().map(|side| (0.0, pairs(side))).collect();
+        each_rank(warmed.values(), reference.values(), |realization, below, ties| {
+            both_ways[realization].0 += references - below - ties / 2.0;
+        });
+        each_rank(reference.values(), warmed.values(), |realization, below, ties| {
+            both_ways[realization].0 += below + ties / 2.0;
+        });
+        let own = sides
             .iter()
-            .map(|(reference, warmed)| score(reference, warmed))
+            .map(|(reference, warmed)| {
+                (
+                    score(reference, warmed),
+                    reference.len() as f64 * warmed.len() as f64,
+                )
+            })
             .collect();
-        let own_counts = sides
-            .iter()
-            .map(|(reference, warmed)| (reference.len() as f64, warmed.len() as f64))
-            .collect();
-        Self {
-            reference,
-            warmed,
-            own_score,
-            own_counts,
-        }
+        Self { both_ways, own }
     }
 
-    /// The chance, each realization counted as often as its weight says. Pairs of a realization with itself are left
-    /// out, also where it was drawn more than once. Nothing where no pair is left.
-    pub fn chance(&self, weights: &[u32]) -> Option<f64> {
-        let weight = |realization: usize| f64::from(weights[realization]);
-        let mut above: f64 = self
-            .reference
-            .values()
-            .iter()
-            .map(|(_, realization)| weight(*realization))
-            .sum();
-        let reference_total = above;
-        let (mut wins, mut warmed_total, mut at) = (0.0, 0.0, 0);
-        let reference = self.reference.values();
-        let warmed = self.warmed.values();
-        let mut next = 0;
-        while next < warmed.len() {
-            let value = warmed[next].0;
-            while at < reference.len() && reference[at].0 < value {
-                above -= weight(reference[at].1);
-                at += 1;
-            }
-            let (mut ties, mut ahead) = (0.0, at);
-            while ahead < reference.len() && reference[ahead].0 == value {
-                ties += weight(reference[ahead].1);
-                ahead += 1;
-            }
-            while next < warmed.len() && warmed[next].0 == value {
-                let weight = weight(warmed[next].1);
-                wins += weight * (above - ties / 2.0);
-                warmed_total += weight;
-                next += 1;
-            }
+    /// The chance and its Monte Carlo error; nothing where there is no pair of different realizations.
+    ///
+    /// The error is what resampling whole realizations without end would give, to first order (the infinitesimal
+    /// jackknife; Jaeckel 1972, Efron 1982): the root of the summed squares of the chance's derivatives by the weight of
+    /// each realization. Resampling itself would take hundreds of passes over all single years.
+    pub fn chance(&self) -> Option<Estimate> {
+        let mut scores = 0.0;
+        let mut pairs = 0.0;
+        for (both, own) in self.both_ways.iter().zip(&self.own) {
+            scores += both.0 / 2.0 - own.0;
+            pairs += both.1 / 2.0 - own.1;
         }
-        let (mut own_wins, mut own_pairs) = (0.0, 0.0);
-        for (realization, (score, (reference, warmed))) in
-            self.own_score.iter().zip(&self.own_counts).enumerate()
-        {
-            let square = weight(realization) * weight(realization);
-            own_wins += square * score;
-            own_pairs += square * reference * warmed;
+        if pairs <= 0.0 {
+            return None;
         }
-        let pairs = reference_total * warmed_total - own_pairs;
-        (pairs > 0.0).then(|| (wins - own_wins) / pairs)
+        let value = scores / pairs;
+        let mut squares = 0.0;
+        for (both, own) in self.both_ways.iter().zip(&self.own) {
+            let derivative = ((both.0 - 2.0 * own.0) - value * (both.1 - 2.0 * own.1)) / pairs;
+            squares += derivative * derivative;
+        }
+        Some(Estimate {
+            value,
+            monte_carlo_error: Some(squares.sqrt()),
+        })
+    }
+}
+
+/// For every value of `of`, how many values of `among` lie below it and how many equal it. Both in ascending order.
+fn each_rank(of: &[(f64, usize)], among: &[(f64, usize)], mut tell: impl FnMut(usize, f64, f64)) {
+    let (mut below, mut not_above) = (0, 0);
+    for (value, realization) in of {
+        while below < among.len() && among[below].0 < *value {
+            below += 1;
+        }
+        not_above = not_above.max(below);
+        while not_above < among.len() && among[not_above].0 <= *value {
+            not_above += 1;
+        }
+        tell(*realization, below as f64, (not_above - below) as f64);
     }
 }
 
@@ -112,5 +117,68 @@ fn score(reference: &[f64], warmed: &[f64]) -> f64 {
 /// ```
 pub fn unpaired_chance(reference: &[f64], warmed: &[f64]) -> Option<f64> {
     let ranked = |values: &[f64]| Ranked::new(values.iter().copied().zip(0..));
-    Odds::new(ranked(reference), ranked(warmed), reference.len()).chance(&vec![1; reference.len()])
+    Odds::new(&ranked(reference), &ranked(warmed), reference.len())
+        .chance()
+        .map(|chance| chance.value)
+}
+
+#[cfg(test)]
+mod tests {
+    use super::super::resample::standard_deviation;
+    use super::*;
+    use crate::perturb::stream;
+    use rand::RngExt;
+
+    /// Two values a realization, compared pair by pair with weights: the plain definition.
+    fn by_definition(reference: &[[f64; 2]], warmed: &[[f64; 2]], weights: &[f64]) -> f64 {
+        let (mut scores, mut pairs) = (0.0, 0.0);
+        for (i, after) in warmed.iter().enumerate() {
+            for (j, before) in reference.iter().enumerate().filter(|(j, _)| *j != i) {
+                scores += weights[i] * weights[j] * score(before, after);
+                pairs += weights[i] * weights[j] * 4.0;
+            }
+        }
+        scores / pairs
+    }
+
+    /// The chance equals its definition to rounding (1e-12), and its error agrees with 3000 bootstrap resamples of
+    /// whole realizations: those know it to 1.3 %, and the first-order formula is short by terms of order 1/40, so 8 %.
+    #[test]
+    fn chance_and_error_agree_with_definition_and_bootstrap() {
+        let mut random = stream(7, 0);
+        let count = 40;
+        let mut values = |shift: f64| -> Vec<[f64; 2]> {
+            (0..count)
+                .map(|_| [0, 1].map(|_| (20.0 * random.random::<f64>()).floor() + shift))
+                .collect()
+        };
+        let (reference, warmed) = (values(0.0), values(-4.0));
+        let ranked = |values: &[[f64; 2]]| {
+            Ranked::new(
+                values
+                    .iter()
+                    .enumerate()
+                    .flat_map(|(at, pair)| pair.map(|value| (value, at))),
+            )
+        };
+        let found = Odds::new(&ranked(&reference), &ranked(&warmed), count)
+            .chance()
+            .unwrap();
+        assert!((found.value - by_definition(&reference, &warmed, &vec![1.0; count])).abs() < 1e-12);
+        let resampled: Vec<f64> = (0..3000)
+            .map(|_| {
+                let mut weights = vec![0.0; count];
+                for _ in 0..count {
+                    weights[random.random_range(0..count)] += 1.0;
+                }
+                by_definition(&reference, &warmed, &weights)
+            })
+            .collect();
+        let bootstrap = standard_deviation(&resampled).unwrap();
+        let error = found.monte_carlo_error.unwrap();
+        assert!(
+            (error / bootstrap - 1.0).abs() < 0.08,
+            "{error} against {bootstrap}"
+        );
+    }
 }

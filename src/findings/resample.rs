@@ -41,13 +41,19 @@ impl Resamples {
         Self { weights }
     }
 
-    /// The number with its error, from the number of each resample.
-    pub(super) fn estimate(&self, value: f64, of: impl Fn(&[u32]) -> Option<f64>) -> Estimate {
-        let values: Option<Vec<f64>> = self.weights.iter().map(|weights| of(weights)).collect();
-        let monte_carlo_error = values.and_then(|values| standard_deviation(&values));
-        Estimate {
+    /// Something of every resample, in their order.
+    pub(super) fn each<T>(&self, of: impl Fn(&[u32]) -> T) -> Vec<T> {
+        self.weights.iter().map(|weights| of(weights)).collect()
+    }
+}
+
+impl Estimate {
+    /// The number with its error: one standard deviation over the numbers of the resamples, none where one is missing.
+    pub(super) fn new(value: f64, resampled: impl IntoIterator<Item = Option<f64>>) -> Self {
+        let values: Option<Vec<f64>> = resampled.into_iter().collect();
+        Self {
             value,
-            monte_carlo_error,
+            monte_carlo_error: values.and_then(|values| standard_deviation(&values)),
         }
     }
 }
@@ -155,7 +161,9 @@ mod tests {
                     / 10.0,
             )
         };
-        let error = resamples.estimate(18.6, mean).monte_carlo_error.unwrap();
+        let error = Estimate::new(18.6, resamples.each(mean))
+            .monte_carlo_error
+            .unwrap();
         assert!((error / 4.8973 - 1.0).abs() < 0.12, "{error}");
     }
 }

@@ -23,8 +23,9 @@ pub struct Shift {
 }
 
 impl Shift {
-    /// The shift between period values of the same realizations; nothing where no pair has both values.
-    pub fn of(reference: &[f64], warmed: &[f64], resamples: &Resamples) -> Option<Self> {
+    /// The shift between period values of the same realizations, and its median in every resample; nothing where no
+    /// pair has both values.
+    pub fn of(reference: &[f64], warmed: &[f64], resamples: &Resamples) -> Option<(Self, Vec<Option<f64>>)> {
         let changes: Vec<(f64, usize)> = reference
             .iter()
             .zip(warmed)
@@ -38,16 +39,15 @@ impl Shift {
         let in_order = sorted(changes.iter().map(|(change, _)| *change));
         let pairs = changes.len();
         let ranked = Ranked::new(changes);
-        let median = resamples.estimate(quantile(&in_order, 0.5), |weights| {
-            ranked.quantiles(weights, [0.5]).map(|[median]| median)
-        });
-        Some(Self {
-            median,
+        let resampled = resamples.each(|weights| ranked.quantiles(weights, [0.5]).map(|[median]| median));
+        let shift = Self {
+            median: Estimate::new(quantile(&in_order, 0.5), resampled.iter().copied()),
             q05: quantile(&in_order, 0.05),
             q95: quantile(&in_order, 0.95),
             pairs,
             pairs_without_value: reference.len() - pairs,
-        })
+        };
+        Some((shift, resampled))
     }
 }
 

@@ -35,6 +35,12 @@ impl Spread {
         })
     }
 
+    /// The 5 %, 50 % and 95 % quantiles of every resample.
+    pub(super) fn resampled(values: &[f64], resamples: &Resamples) -> Vec<Option<[f64; 3]>> {
+        let ranked = Ranked::new(values.iter().copied().zip(0..));
+        resamples.each(|weights| ranked.quantiles(weights, [0.05, 0.5, 0.95]))
+    }
+
     /// From the median to the end of the spread that a shift points to: `q50 - q5` for a fall, `q95 - q50` for a rise.
     pub fn half_towards(&self, shift: f64) -> f64 {
         half_towards([self.q05, self.q50, self.q95], shift)
@@ -44,33 +50,20 @@ impl Spread {
 /// The size of the shift over the half of the reference's 5-95 % spread that it points to, with its Monte Carlo error.
 /// Above 1 the warmed median leaves the reference's 5-95 % range: warming outweighs.
 ///
-/// Nothing where the reference does not spread, or where dates are missing at a quantile.
+/// `shifts` and `spreads` are the same of every resample. Nothing where the reference does not spread.
 pub fn signal_to_spread(
-    reference: &[f64],
-    warmed: &[f64],
     shift: f64,
     spread: &Spread,
-    resamples: &Resamples,
+    shifts: &[Option<f64>],
+    spreads: &[Option<[f64; 3]>],
 ) -> Option<Estimate> {
-    let half = spread.half_towards(shift);
-    if half <= 0.0 {
-        return None;
-    }
-    let ranked_reference = Ranked::new(reference.iter().copied().zip(0..));
-    let changes = reference
-        .iter()
-        .zip(warmed)
-        .zip(0..)
-        .filter_map(|((before, after), realization)| {
-            (before.is_finite() && after.is_finite()).then_some((after - before, realization))
-        });
-    let ranked_changes = Ranked::new(changes);
-    Some(resamples.estimate(shift.abs() / half, |weights| {
-        let [shift] = ranked_changes.quantiles(weights, [0.5])?;
-        let quantiles = ranked_reference.quantiles(weights, [0.05, 0.5, 0.95])?;
-        let half = half_towards(quantiles, shift);
-        (half > 0.0 && half.is_finite()).then(|| shift.abs() / half)
-    }))
+    let ratio = |shift: f64, half: f64| (half > 0.0 && half.is_finite()).then(|| shift.abs() / half);
+    let value = ratio(shift, spread.half_towards(shift))?;
+    let resampled = shifts.iter().zip(spreads).map(|(shift, quantiles)| {
+        let (shift, quantiles) = ((*shift)?, (*quantiles)?);
+        ratio(shift, half_towards(quantiles, shift))
+    });
+    Some(Estimate::new(value, resampled))
 }
 
 fn half_towards([q05, q50, q95]: [f64; 3], shift: f64) -> f64 {

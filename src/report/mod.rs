@@ -1,8 +1,24 @@
 //! The report: findings as words, tables, a page and a manifest; bytes in memory. `publish` alone writes them.
 
+mod briefing;
+mod cautions;
 mod daily;
+pub mod numbers;
+mod publish;
+mod study;
+mod summary;
+mod tables;
+mod terms;
+mod words;
 
+pub use briefing::briefing_html;
+pub use cautions::CAUTIONS;
 pub use daily::{DailyError, daily_csv};
+pub use publish::{PublishError, may_replace, publish};
+pub use study::{Input, Origin, Record, Study};
+pub use summary::{manifest_json, summary_json};
+pub use tables::{ReportFile, tables};
+pub use words::{Answer, answer_in_words, period_name};
 
 /// Version of every JSON document we write: a number removed or renamed raises it.
 pub const SCHEMA_VERSION: u32 = 1;

@@ -1,0 +1,268 @@
+//! `thawline study`: the main job, from a scenario to a published briefing.
+
+use super::arguments::Shared;
+use super::assemble::{Ready, assemble, input_failure};
+use super::failure::Failure;
+use super::output;
+use super::progress::{Progress, is_interrupted, mind_interrupts};
+use crate::ensemble::{Halt, Plan, record_years, run as run_ensemble};
+use crate::fault::Fault;
+use crate::figures::{FIGURES, Setting};
+use crate::findings::{Findings, Questions, answer};
+use crate::perturb::YearBlocks;
+use crate::report::{
+    Answer, Input, Origin, PublishError, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words,
+    briefing_html, manifest_json, may_replace, publish, summary_json, tables,
+};
+use crate::season::Measures;
+use crate::snow::Path as RowPath;
+use serde::Serialize;
+use std::path::{Path, PathBuf};
+
+/// A study that would keep more single years than this is refused before it starts, bytes.
+const MOST_KEPT_BYTES: f64 = 4e9;
+
+#[derive(Serialize)]
+struct Done<'a> {
+    schema_version: u32,
+    program: &'static str,
+    status: &'static str,
+    title: &'a str,
+    into: String,
+    files: Vec<&'a str>,
+    answer: &'a Answer,
+}
+
+/// Runs the command.
+pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
+    mind_interrupts();
+    let progress = Progress::new(shared);
+    let ready = assemble(path, shared)?;
+    let target = target(&ready, shared)?;
+    if !shared.force {
+        may_replace(&target).map_err(unpublished)?;
+    }
+    let scenario = &ready.scenario;
+    let measures = Measures::new(scenario.season.clone());
+    check_size(&ready, measures.list().len(), shared)?;
+    if !shared.quiet {
+        output::complain(&crate::scenario::unlikely_lines(&ready.unlikely));
+    }
+
+    progress.stage(&format!(
+        "running {} realizations of {} years under {} levels and {} bands",
+        scenario.realizations.count,
+        scenario.realizations.years,
+        scenario.warming.levels_c.len(),
+        ready.basin.bands.len()
+    ));
+    let findings = in_pool(shared, || find(&ready, &measures, &progress))??;
+
+    progress.stage("writing figures, tables and briefing");
+    let study = describe(&ready, &measures, &findings, path, shared)?;
+    let answer = answer_in_words(&findings, study.mean_change_sd_pct);
+    let files = write_files(&study, &answer)?;
+    if is_interrupted() {
+        return Err(Failure::Interrupted);
+    }
+    publish(&files, &target, shared.force).map_err(unpublished)?;
+    let into = target.display().to_string();
+    if shared.json {
+        let files = files.iter().map(|(name, _)| name.as_str()).collect();
+        return output::print_json(&Done {
+            schema_version: SCHEMA_VERSION,
+            program: "thawline",
+            status: "done",
+            title: study.title,
+            into,
+            files,
+            answer: &answer,
+        });
+    }
+    if !shared.quiet {
+        output::complain(&format!(
+            "{}\nbriefing: {}\n",
+            answer.verdict,
+            target.join("briefing.html").display()
+        ));
+    }
+    Ok(())
+}
+
+/// Runs a piece of work on the number of threads that was asked for.
+fn in_pool<T: Send>(shared: &Shared, work: impl FnOnce() -> T + Send) -> Result<T, Failure> {
+    let threads = shared.threads.map_or(0, usize::from);
+    let pool = rayon::ThreadPoolBuilder::new().num_threads(threads).build();
+    let pool = pool.map_err(|error| Failure::Ours(format!("cannot start threads: {error}")))?;
+    Ok(pool.install(work))
+}
+
+fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findings, Failure> {
+    let scenario = &ready.scenario;
+    let warming = &scenario.warming;
+    let changes: Vec<_> = warming
+        .levels_c
+        .iter()
+        .map(|level| warming.warming.at(*level))
+        .collect();
+    let lanes = ready.lanes(&changes);
+    let generator = YearBlocks {
+        record: &ready.weather,
+        seed: scenario.seed,
+        years: scenario.realizations.years,
+        mean_run_years: scenario.realizations.mean_run_years,
+        mean_change_sd_pct: scenario.realizations.mean_change_sd_pct.unwrap_or(0.0),
+    };
+    let plan = Plan {
+        lanes: &lanes,
+        levels: changes.len(),
+        reference: warming.reference,
+        bands: ready.basin.bands.len(),
+        measures,
+        generator: &generator,
+        realizations: scenario.realizations.count,
+        path: RowPath::default(),
+    };
+    let seasons = run_ensemble(&plan, progress).map_err(|halt| match halt {
+        Halt::Stopped => Failure::Interrupted,
+        Halt::Ledger(open) => Failure::Ours(open.to_string()),
+    })?;
+    let questions = Questions {
+        levels_c: &warming.levels_c,
+        reference: warming.reference,
+        bands: &ready.basin.bands,
+        seed: scenario.seed,
+    };
+    Ok(answer(&seasons, &questions))
+}
+
+fn describe<'a>(
+    ready: &'a Ready,
+    measures: &'a Measures,
+    findings: &'a Findings,
+    path: &Path,
+    shared: &Shared,
+) -> Result<Study<'a>, Failure> {
+    let scenario = &ready.scenario;
+    let reference = scenario
+        .warming
+        .warming
+        .at(scenario.warming.levels_c[scenario.warming.reference]);
+    let lanes = ready.lanes(&[reference]);
+    let years =
+        record_years(&lanes, measures, &ready.weather).map_err(|open| Failure::Ours(open.to_string()))?;
+    let seed = shared
+        .seed
+        .map_or(String::new(), |seed| format!(" --seed {seed}"));
+    let roles = ["scenario", "bands", "weather"];
+    let inputs = roles.into_iter().zip(&ready.files).map(|(role, file)| Input {
+        role,
+        path: file.name.clone(),
+        sha256: file.sha256.clone(),
+    });
+    Ok(Study {
+        title: &scenario.title,
+        basin: &ready.basin,
+        station_elevation_m: scenario.weather.station_elevation_m,
+        gauge_multiplier: scenario.weather.gauge_multiplier,
+        season: measures.settings(),
+        snow: &scenario.snow,
+        warming: &scenario.warming.warming,
+        mean_change_sd_pct: scenario.realizations.mean_change_sd_pct,
+        mean_run_years: scenario.realizations.mean_run_years,
+        record: Record {
+            counts: &ready.record.counts,
+            skipped: &ready.record.skipped,
+            years,
+            measures: measures.list(),
+            mean_precipitation_mm: ready.mean_precipitation_mm(),
+        },
+        findings,
+        defaults: ready
+            .defaults
+            .iter()
+            .map(|default| (default.key.clone(), default.value.clone()))
+            .collect(),
+        unlikely: &ready.unlikely,
+        origin: Origin {
+            command: format!("thawline study {}{seed}", path.display()),
+            seed: scenario.seed,
+            inputs: inputs.collect(),
+        },
+    })
+}
+
+fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Failure> {
+    let ours = |error: serde_json::Error| Failure::Ours(error.to_string());
+    let setting = Setting {
+        study_title: study.title,
+        water_year_starts: study.starts(),
+    };
+    let mut files = Vec::new();
+    let mut drawn = Vec::new();
+    for figure in &FIGURES {
+        if let Some(svg) = (figure.draw)(study.findings, &setting) {
+            files.push((
+                format!("figures/{}.svg", figure.slug),
+                svg.text.clone().into_bytes(),
+            ));
+            drawn.push(svg);
+        }
+    }
+    files.extend(tables(study));
+    files.push(("briefing.html".to_owned(), briefing_html(study, answer, &drawn)));
+    files.push((
+        "summary.json".to_owned(),
+        summary_json(study, answer).map_err(ours)?,
+    ));
+    let names: Vec<&str> = files
+        .iter()
+        .map(|(name, _)| name.as_str())
+        .chain(["run.json"])
+        .collect();
+    let manifest = manifest_json(study, &names).map_err(ours)?;
+    files.push(("run.json".to_owned(), manifest));
+    Ok(files)
+}
+
+fn target(ready: &Ready, shared: &Shared) -> Result<PathBuf, Failure> {
+    match (&shared.into, &ready.stem) {
+        (Some(into), _) => Ok(into.clone()),
+        (None, Some(stem)) => Ok(Path::new("output").join(stem)),
+        (None, None) => Err(Failure::CommandLine(
+            "a scenario from standard input needs --into DIR for its results".to_owned(),
+        )),
+    }
+}
+
+fn check_size(ready: &Ready, measures: usize, shared: &Shared) -> Result<(), Failure> {
+    let realizations = &ready.scenario.realizations;
+    let years = f64::from(realizations.count) * realizations.years as f64;
+    let bytes = years * 8.0 * (measures * ready.scenario.warming.levels_c.len()) as f64;
+    if bytes <= MOST_KEPT_BYTES {
+        return Ok(());
+    }
+    let fault = Fault::key(
+        "realizations.count",
+        realizations.count,
+        format!(
+            "a study whose single years take at most {} GB",
+            MOST_KEPT_BYTES / 1e9
+        ),
+        format!(
+            "these would take {:.0} GB: run fewer realizations, years or levels",
+            bytes / 1e9
+        ),
+    );
+    let file = &ready.files[0];
+    Err(input_failure(
+        &[fault],
+        &file.name,
+        &file.text,
+        shared.is_coloured(),
+    ))
+}
+
+fn unpublished(error: PublishError) -> Failure {
+    Failure::FileSystem(error.to_string())
+}

@@ -1,0 +1,18 @@
+//! What a reader must know before using a number. The first ones matter most.
+
+/// Cautions, in order of weight.
+pub const CAUTIONS: [&str; 9] = [
+    "A planning aid. Not for flood forecasting, flood design, the operation or the safety of dams: local codes, \
+     water-control manuals and licensed practice rule.",
+    "What if, not forecast: no warming level has a date or a likelihood here.",
+    "The spread holds precipitation's chance and the stated assumptions only. True uncertainty is wider.",
+    "Degree-day factors describe melt in the climate they come from. Melt may slow as it moves earlier into the year, \
+     and factors change with cloud, albedo and season; no direction of the error is claimed.",
+    "Warming is added evenly to every day and band: storms, wet days, and the link of temperature and precipitation stay \
+     those of the record, inversions and warming that grows with elevation are left out.",
+    "Rain and snow are told apart by air temperature; humidity matters between about 1 and 3 °C.",
+    "Not represented: wind drift, forest interception, sublimation, fire, dust, glaciers, soil, groundwater, \
+     evaporation. Snowpack outflow and water input are water leaving the snow and reaching the ground, not streamflow.",
+    "Resampled years cannot hold a drought longer, or a storm larger, than the record's years can be put together to.",
+    "'In this model, +2 °C makes' is what these numbers say; never that warming caused what a year brought.",
+];

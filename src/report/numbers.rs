@@ -1,0 +1,99 @@
+//! Numbers as people read them: rounded to what they can bear, with a true minus, dates by name.
+
+use crate::calendar::{MONTHS, WaterYearStart, date_of};
+use crate::season::{Kind, Outcome};
+use chrono::Datelike;
+
+/// The word for a number that is not there.
+pub const DASH: &str = "–";
+
+/// A number with so many decimals, a true minus, no minus before zero, and thousands set apart by a thin space.
+pub fn fixed(value: f64, decimals: usize) -> String {
+    let text = format!("{:.decimals$}", value.abs());
+    let is_zero = text.bytes().all(|byte| byte == b'0' || byte == b'.');
+    let (whole, fraction) = text.split_at(text.find('.').unwrap_or(text.len()));
+    let mut grouped = String::new();
+    for (at, digit) in whole.chars().enumerate() {
+        if at > 0 && (whole.len() - at) % 3 == 0 && whole.len() > 4 {
+            grouped.push('\u{2009}');
+        }
+        grouped.push(digit);
+    }
+    let sign = if value < 0.0 && !is_zero { "−" } else { "" };
+    format!("{sign}{grouped}{fraction}")
+}
+
+/// The same with a plus before what is above zero.
+pub fn signed(value: f64, decimals: usize) -> String {
+    let text = fixed(value, decimals);
+    let is_zero = text.chars().all(|c| c == '0' || c == '.');
+    if value > 0.0 && !is_zero {
+        format!("+{text}")
+    } else {
+        text
+    }
+}
+
+/// Decimals of an amount of water: whole mm, tenths below 10 mm.
+pub fn amount_decimals(value_mm: f64) -> usize {
+    usize::from(value_mm.abs() < 9.95)
+}
+
+/// `412 mm`.
+pub fn amount(value_mm: f64) -> String {
+    format!("{} mm", fixed(value_mm, amount_decimals(value_mm)))
+}
+
+/// `+2 °C`; the decimals that the level has.
+pub fn level(level_c: f64) -> String {
+    let decimals = (0..3)
+        .find(|d| format!("{level_c:.*}", *d).parse() == Ok(level_c))
+        .unwrap_or(3);
+    format!("{} °C", signed(level_c, decimals))
+}
+
+/// `14 May`: the date of a day of the water year in a year of 365 days, to the nearest whole day.
+pub fn date(day: f64, starts: WaterYearStart) -> String {
+    let date = date_of(starts.first_day(2002), day.round().max(1.0) as usize);
+    format!("{} {}", date.day(), MONTHS[date.month0() as usize])
+}
+
+/// `12 days earlier`, `1 day later`, `no change to the day`.
+pub fn days_moved(days: f64) -> String {
+    let whole = days.abs().round();
+    match (whole, days < 0.0) {
+        (0.0, _) => "unchanged to the day".to_owned(),
+        (1.0, true) => "1 day earlier".to_owned(),
+        (1.0, false) => "1 day later".to_owned(),
+        (_, true) => format!("{whole} days earlier"),
+        (_, false) => format!("{whole} days later"),
+    }
+}
+
+/// A measure's value in words.
+pub fn outcome(outcome: Outcome, kind: Kind, starts: WaterYearStart) -> String {
+    match (outcome, kind) {
+        (Outcome::Value(value), Kind::AmountMm) => amount(value),
+        (Outcome::Value(value), Kind::DayOfWaterYear) => date(value, starts),
+        (Outcome::None, _) => "none".to_owned(),
+        (Outcome::NotGone, _) => "not gone".to_owned(),
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::calendar::MonthDay;
+
+    #[test]
+    fn numbers_read_well() {
+        assert_eq!(fixed(-0.04, 1), "0.0", "no minus before zero");
+        assert_eq!(fixed(-12_345.6, 0), "−12\u{2009}346");
+        assert_eq!(signed(0.0, 0), "0");
+        assert_eq!(level(1.5), "+1.5 °C");
+        assert_eq!(level(-2.0), "−2 °C");
+        assert_eq!(days_moved(-0.6), "1 day earlier");
+        let october = WaterYearStart(MonthDay::new(10, 1).unwrap());
+        assert_eq!(date(183.0, october), "1 April");
+    }
+}

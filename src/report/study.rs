@@ -1,0 +1,87 @@
+//! Everything a report is made of, gathered by the command that ran the study.
+
+use crate::basin::Basin;
+use crate::calendar::WaterYearStart;
+use crate::ensemble::RecordYear;
+use crate::fault::Unlikely;
+use crate::findings::Findings;
+use crate::perturb::Warming;
+use crate::season::{Measure, SeasonSettings};
+use crate::snow::{GaugeMultiplier, SnowParams};
+use crate::weather::{Counts, SkippedYear};
+use serde::Serialize;
+
+/// A finished study.
+pub struct Study<'a> {
+    /// Its title.
+    pub title: &'a str,
+    /// The basin.
+    pub basin: &'a Basin,
+    /// Elevation of the station, m.
+    pub station_elevation_m: f64,
+    /// Gauge catch.
+    pub gauge_multiplier: GaugeMultiplier,
+    /// Dates and windows.
+    pub season: &'a SeasonSettings,
+    /// Snow parameters; never fitted so far.
+    pub snow: &'a SnowParams,
+    /// Warming's shape and precipitation.
+    pub warming: &'a Warming,
+    /// Assumed standard deviation of the change of mean precipitation, percent.
+    pub mean_change_sd_pct: Option<f64>,
+    /// Mean length of a run of record years.
+    pub mean_run_years: f64,
+    /// The record.
+    pub record: Record<'a>,
+    /// What was found.
+    pub findings: &'a Findings,
+    /// Defaults in force, `(key, value)`.
+    pub defaults: Vec<(String, String)>,
+    /// What is unlikely.
+    pub unlikely: &'a [Unlikely],
+    /// How the study is repeated, and from what.
+    pub origin: Origin,
+}
+
+/// The record as the report needs it.
+pub struct Record<'a> {
+    /// Counts.
+    pub counts: &'a Counts,
+    /// Years left out.
+    pub skipped: &'a [SkippedYear],
+    /// The years in use, measured at the reference.
+    pub years: Vec<RecordYear>,
+    /// What was measured.
+    pub measures: &'a [Measure],
+    /// Mean yearly precipitation at the station after the catch correction, mm.
+    pub mean_precipitation_mm: f64,
+}
+
+/// Where a study comes from.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct Origin {
+    /// The command that repeats it.
+    pub command: String,
+    /// Seed in force.
+    pub seed: u64,
+    /// Files and digests: scenario, bands, weather.
+    pub inputs: Vec<Input>,
+}
+
+/// A file that was read.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct Input {
+    /// What it is.
+    pub role: &'static str,
+    /// Its path as typed; of a data file, relative to the scenario.
+    pub path: String,
+    /// SHA-256 of its bytes.
+    pub sha256: String,
+}
+
+impl Study<'_> {
+    /// The start of the water year.
+    pub fn starts(&self) -> WaterYearStart {
+        self.season.water_year_starts
+    }
+}

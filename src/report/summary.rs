@@ -1,0 +1,208 @@
+//! `summary.json`: every number that the briefing says or a figure draws; `run.json`: how it came about.
+
+use super::SCHEMA_VERSION;
+use super::study::{Input, Study};
+use super::words::Answer;
+use crate::fault::Unlikely;
+use crate::findings::Findings;
+use crate::perturb::Warming;
+use crate::season::{Outcome, SeasonSettings};
+use crate::snow::{GaugeMultiplier, SnowParams};
+use crate::weather::{Counts, SkippedYear};
+use serde::Serialize;
+
+#[derive(Serialize)]
+struct Summary<'a> {
+    schema_version: u32,
+    program: &'static str,
+    title: &'a str,
+    answer: &'a Answer,
+    quantiles: &'static str,
+    season: &'a SeasonSettings,
+    basin: BasinSummary,
+    record: RecordSummary<'a>,
+    findings: &'a Findings,
+}
+
+#[derive(Serialize)]
+struct BasinSummary {
+    area_km2: f64,
+    bands: usize,
+    lowest_m: f64,
+    highest_m: f64,
+    precipitation_over_station: f64,
+    mean_precipitation_mm: f64,
+}
+
+#[derive(Serialize)]
+struct RecordSummary<'a> {
+    #[serde(flatten)]
+    counts: &'a Counts,
+    years_used: usize,
+    years_left_out: &'a [SkippedYear],
+    mean_station_precipitation_mm: f64,
+    headline_by_year: Vec<HeadlineYear>,
+}
+
+#[derive(Serialize)]
+struct HeadlineYear {
+    water_year: i32,
+    value: Outcome,
+}
+
+/// `summary.json`.
+///
+/// # Errors
+/// A number that JSON cannot hold: a fault of ours.
+pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Vec<u8>> {
+    let basin = study.basin;
+    let ratio = basin.precipitation_ratio(study.station_elevation_m);
+    let headline = |year: &crate::ensemble::RecordYear| HeadlineYear {
+        water_year: year.water_year,
+        value: year.values.first().copied().map_or(Outcome::None, Outcome::from),
+    };
+    lines(&Summary {
+        schema_version: SCHEMA_VERSION,
+        program: "thawline",
+        title: study.title,
+        answer,
+        quantiles: "Hyndman & Fan (1996) type 8; amounts in mm, dates as day of the water year counted from 1",
+        season: study.season,
+        basin: BasinSummary {
+            area_km2: basin.area_km2(),
+            bands: basin.bands.len(),
+            lowest_m: basin.bands.first().map_or(0.0, |band| band.lower_m),
+            highest_m: basin.bands.last().map_or(0.0, |band| band.upper_m),
+            precipitation_over_station: ratio,
+            mean_precipitation_mm: ratio * study.record.mean_precipitation_mm,
+        },
+        record: RecordSummary {
+            counts: study.record.counts,
+            years_used: study.record.years.len(),
+            years_left_out: study.record.skipped,
+            mean_station_precipitation_mm: study.record.mean_precipitation_mm,
+            headline_by_year: study.record.years.iter().map(headline).collect(),
+        },
+        findings: study.findings,
+    })
+}
+
+#[derive(Serialize)]
+struct Manifest<'a> {
+    schema_version: u32,
+    program: &'static str,
+    version: &'static str,
+    command: &'a str,
+    seed: u64,
+    inputs: &'a [Input],
+    parameters: Parameters<'a>,
+    defaults_in_force: Vec<Default<'a>>,
+    unlikely: Vec<Notice<'a>>,
+    left_out: LeftOut<'a>,
+    files: Vec<&'a str>,
+}
+
+#[derive(Serialize)]
+struct Parameters<'a> {
+    title: &'a str,
+    latitude_deg: f64,
+    tmin_temperature_gradient_c_per_km: [f64; 12],
+    tmax_temperature_gradient_c_per_km: [f64; 12],
+    precipitation_gradient: crate::basin::PrecipitationGradient,
+    station_elevation_m: f64,
+    gauge_multiplier: GaugeMultiplier,
+    season: &'a SeasonSettings,
+    snow: &'a SnowParams,
+    is_fitted: bool,
+    levels_c: &'a [f64],
+    reference_c: f64,
+    warming: &'a Warming,
+    realizations: Realizations,
+}
+
+#[derive(Serialize)]
+struct Realizations {
+    generator: &'static str,
+    count: usize,
+    years: usize,
+    mean_run_years: f64,
+    mean_change_sd_pct: Option<f64>,
+}
+
+#[derive(Serialize)]
+struct Default<'a> {
+    key: &'a str,
+    value: &'a str,
+}
+
+#[derive(Serialize)]
+struct Notice<'a> {
+    about: &'a str,
+    why: &'a str,
+}
+
+#[derive(Serialize)]
+struct LeftOut<'a> {
+    counts: &'a Counts,
+    water_years: &'a [SkippedYear],
+}
+
+/// `run.json`; `files` are all files of the results, this one included.
+///
+/// # Errors
+/// A number that JSON cannot hold: a fault of ours.
+pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Vec<u8>> {
+    let findings = study.findings;
+    let notice = |notice: &'_ Unlikely| (notice.about.clone(), notice.why.clone());
+    let unlikely: Vec<(String, String)> = study.unlikely.iter().map(notice).collect();
+    lines(&Manifest {
+        schema_version: SCHEMA_VERSION,
+        program: "thawline",
+        version: env!("CARGO_PKG_VERSION"),
+        command: &study.origin.command,
+        seed: study.origin.seed,
+        inputs: &study.origin.inputs,
+        parameters: Parameters {
+            title: study.title,
+            latitude_deg: study.basin.latitude_deg,
+            tmin_temperature_gradient_c_per_km: study.basin.temperature.tmin_c_per_km,
+            tmax_temperature_gradient_c_per_km: study.basin.temperature.tmax_c_per_km,
+            precipitation_gradient: study.basin.precipitation,
+            station_elevation_m: study.station_elevation_m,
+            gauge_multiplier: study.gauge_multiplier,
+            season: study.season,
+            snow: study.snow,
+            is_fitted: false,
+            levels_c: &findings.levels_c,
+            reference_c: findings.levels_c[findings.reference],
+            warming: study.warming,
+            realizations: Realizations {
+                generator: "year-blocks",
+                count: findings.realizations,
+                years: findings.years,
+                mean_run_years: study.mean_run_years,
+                mean_change_sd_pct: study.mean_change_sd_pct,
+            },
+        },
+        defaults_in_force: study
+            .defaults
+            .iter()
+            .map(|(key, value)| Default { key, value })
+            .collect(),
+        unlikely: unlikely
+            .iter()
+            .map(|(about, why)| Notice { about, why })
+            .collect(),
+        left_out: LeftOut {
+            counts: study.record.counts,
+            water_years: study.record.skipped,
+        },
+        files: files.to_vec(),
+    })
+}
+
+fn lines(document: &impl Serialize) -> serde_json::Result<Vec<u8>> {
+    let mut text = serde_json::to_vec_pretty(document)?;
+    text.push(b'\n');
+    Ok(text)
+}

@@ -1,0 +1,229 @@
+//! Tables as CSV: units in the header, uncertainty beside every estimate, empty where there is no number.
+
+use super::study::Study;
+use crate::findings::{Chance, Distribution, Estimate, LevelFindings, MeasureFindings};
+use crate::season::{Kind, Measure, Outcome};
+use csv::Writer;
+
+/// A file of a report: path within the results and content.
+pub type ReportFile = (String, Vec<u8>);
+
+/// Every table of a study.
+pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
+    let findings = study.findings;
+    let basin = || findings.basin.iter().map(|measure| (None, measure));
+    let bands = || {
+        let numbered = findings.bands.iter().enumerate();
+        numbered.flat_map(|(number, band)| {
+            band.measures
+                .iter()
+                .map(move |m| (Some((number + 1, &band.band)), m))
+        })
+    };
+    vec![
+        (
+            "tables/basin-amounts.csv".to_owned(),
+            table(basin().collect(), Kind::AmountMm),
+        ),
+        (
+            "tables/basin-dates.csv".to_owned(),
+            table(basin().collect(), Kind::DayOfWaterYear),
+        ),
+        (
+            "tables/bands-amounts.csv".to_owned(),
+            table(bands().collect(), Kind::AmountMm),
+        ),
+        (
+            "tables/bands-dates.csv".to_owned(),
+            table(bands().collect(), Kind::DayOfWaterYear),
+        ),
+        ("tables/record-years.csv".to_owned(), record_years(study)),
+    ]
+}
+
+type Place<'a> = Option<(usize, &'a crate::basin::Band)>;
+
+/// One row a place, measure and level.
+fn table(rows: Vec<(Place<'_>, &MeasureFindings)>, kind: Kind) -> Vec<u8> {
+    let (unit, change_unit) = match kind {
+        Kind::AmountMm => ("mm", "mm"),
+        Kind::DayOfWaterYear => ("day_of_water_year", "days"),
+    };
+    let has_bands = rows.iter().any(|(place, _)| place.is_some());
+    let mut writer = Writer::from_writer(Vec::new());
+    let mut header: Vec<String> = Vec::new();
+    if has_bands {
+        header.extend(["band", "lower_m", "upper_m", "area_km2"].map(str::to_owned));
+    }
+    header.extend(
+        [
+            "measure",
+            "level_degC",
+            "realizations",
+            "realizations_none",
+            "realizations_not_gone",
+        ]
+        .map(str::to_owned),
+    );
+    header.extend(["q05", "q25", "q50", "q75", "q95"].map(|q| format!("{q}_{unit}")));
+    header.push(format!("shift_{change_unit}"));
+    header.push(format!("shift_monte_carlo_error_{change_unit}"));
+    header.extend(["shift_q05", "shift_q95"].map(|q| format!("{q}_{change_unit}")));
+    header.extend(["shift_pairs", "shift_pairs_without_value"].map(str::to_owned));
+    if kind == Kind::AmountMm {
+        header.push("change_pct".to_owned());
+    }
+    header.extend(
+        [
+            "signal_to_half_spread",
+            "signal_to_half_spread_monte_carlo_error",
+            "signal_to_standard_deviation",
+            "signal_to_standard_deviation_paired",
+            "years_none",
+            "years_not_gone",
+        ]
+        .map(str::to_owned),
+    );
+    if !has_bands {
+        header.extend(["q05", "q25", "q50", "q75", "q95"].map(|q| format!("single_year_{q}_{unit}")));
+        for chance in [
+            "period_below_reference",
+            "year_below_reference",
+            "reaches_reference_median",
+        ] {
+            header.extend(
+                ["", "_monte_carlo_error", "_bound_95pct"].map(|end| format!("chance_{chance}{end}")),
+            );
+        }
+    }
+    write(&mut writer, &header);
+    for (place, measure) in rows
+        .into_iter()
+        .filter(|(_, measure)| measure.measure.kind == kind)
+    {
+        for level in &measure.levels {
+            write(&mut writer, &row(place, &measure.measure, level, kind));
+        }
+    }
+    finish(writer)
+}
+
+fn row(place: Place<'_>, measure: &Measure, level: &LevelFindings, kind: Kind) -> Vec<String> {
+    let mut row = Vec::new();
+    if let Some((number, band)) = place {
+        row.push(number.to_string());
+        row.extend([band.lower_m, band.upper_m, band.area_km2].map(|number| number.to_string()));
+    }
+    row.extend([measure.name.clone(), level.level_c.to_string()]);
+    row.extend(
+        [level.periods.count, level.periods.none, level.periods.not_gone].map(|count| count.to_string()),
+    );
+    row.extend(quantiles(&level.periods));
+    let shift = level.shift;
+    row.extend(estimate(shift.map(|shift| shift.median)));
+    row.extend([shift.map(|shift| shift.q05), shift.map(|shift| shift.q95)].map(optional));
+    row.extend(
+        [
+            shift.map(|shift| shift.pairs),
+            shift.map(|shift| shift.pairs_without_value),
+        ]
+        .map(|count| count.map_or(String::new(), |count| count.to_string())),
+    );
+    if kind == Kind::AmountMm {
+        row.push(optional(level.percent_change));
+    }
+    row.extend(estimate(level.signal_to_spread));
+    row.push(optional(
+        level.signal_to_noise.map(|ratio| ratio.against_reference),
+    ));
+    row.push(optional(level.signal_to_noise.map(|ratio| ratio.paired)));
+    row.extend(level.years_undefined.map(|count| count.to_string()));
+    if let Some(single_years) = &level.single_years {
+        row.extend(quantiles(single_years));
+        let chances = level.chances;
+        row.extend(chance(chances.and_then(|chances| chances.period_below_reference)));
+        row.extend(chance(chances.and_then(|chances| chances.year_below_reference)));
+        row.extend(chance(
+            chances.and_then(|chances| chances.reaches_reference_median),
+        ));
+    }
+    row
+}
+
+/// The record's years: used or left out, why, and what they measure at the reference.
+fn record_years(study: &Study<'_>) -> Vec<u8> {
+    let record = &study.record;
+    let mut writer = Writer::from_writer(Vec::new());
+    let mut header = vec![
+        "water_year".to_owned(),
+        "used".to_owned(),
+        "why_left_out".to_owned(),
+    ];
+    header.extend(record.measures.iter().map(|measure| measure.name.clone()));
+    write(&mut writer, &header);
+    let mut rows: Vec<(i32, Vec<String>)> = record
+        .years
+        .iter()
+        .map(|year| {
+            let mut row = vec![year.water_year.to_string(), "yes".to_owned(), String::new()];
+            row.extend(year.values.iter().map(|value| worded(Outcome::from(*value))));
+            (year.water_year, row)
+        })
+        .collect();
+    rows.extend(record.skipped.iter().map(|year| {
+        let why: Vec<String> = year.why.iter().map(ToString::to_string).collect();
+        let mut row = vec![year.water_year.to_string(), "no".to_owned(), why.join("; ")];
+        row.resize(3 + record.measures.len(), String::new());
+        (year.water_year, row)
+    }));
+    rows.sort_by_key(|(year, _)| *year);
+    for (_, row) in rows {
+        write(&mut writer, &row);
+    }
+    finish(writer)
+}
+
+fn quantiles(distribution: &Distribution) -> [String; 5] {
+    [
+        distribution.q05,
+        distribution.q25,
+        distribution.q50,
+        distribution.q75,
+        distribution.q95,
+    ]
+    .map(worded)
+}
+
+/// A number, or the words `none` and `not gone`.
+fn worded(outcome: Outcome) -> String {
+    match outcome {
+        Outcome::Value(value) => value.to_string(),
+        Outcome::None => "none".to_owned(),
+        Outcome::NotGone => "not gone".to_owned(),
+    }
+}
+
+fn optional(value: Option<f64>) -> String {
+    value.map_or(String::new(), |value| value.to_string())
+}
+
+fn estimate(estimate: Option<Estimate>) -> [String; 2] {
+    [
+        optional(estimate.map(|e| e.value)),
+        optional(estimate.and_then(|e| e.monte_carlo_error)),
+    ]
+}
+
+fn chance(chance: Option<Chance>) -> [String; 3] {
+    let [value, error] = estimate(chance.map(|chance| chance.estimate));
+    [value, error, optional(chance.and_then(|chance| chance.bound))]
+}
+
+/// Writing to memory cannot fail.
+fn write(writer: &mut Writer<Vec<u8>>, row: &[String]) {
+    let _ = writer.write_record(row);
+}
+
+fn finish(writer: Writer<Vec<u8>>) -> Vec<u8> {
+    writer.into_inner().unwrap_or_default()
+}

@@ -1,0 +1,279 @@
+//! The answer in words. Every word hangs on a number of the findings and turns round when the number does.
+
+use super::numbers::{amount, amount_decimals, days_moved, fixed, level, signed};
+use crate::findings::{Chance, Crossing, Findings, LevelFindings, MeasureFindings};
+use crate::season::Kind;
+
+/// The answer to the study's question.
+#[derive(Debug, Clone, PartialEq, serde::Serialize)]
+pub struct Answer {
+    /// One sentence: does warming outweigh the precipitation spread, and from where on?
+    pub verdict: String,
+    /// How much, level by level.
+    pub amounts: Vec<String>,
+    /// What the verdict measures with, and whether another measure would change it.
+    pub yardstick: Vec<String>,
+    /// How much earlier.
+    pub timing: Vec<String>,
+    /// Where.
+    pub elevation: Option<String>,
+    /// Could chance hide it?
+    pub chances: Vec<String>,
+}
+
+/// Puts the findings into words. `mean_change_sd_pct` is the assumed change of mean precipitation, if any.
+pub fn answer_in_words(findings: &Findings, mean_change_sd_pct: Option<f64>) -> Answer {
+    let Some(headline) = findings.basin.first() else {
+        return Answer {
+            verdict: "Nothing was measured.".to_owned(),
+            amounts: Vec::new(),
+            yardstick: Vec::new(),
+            timing: Vec::new(),
+            elevation: None,
+            chances: Vec::new(),
+        };
+    };
+    let changed = |level: &&LevelFindings| level.shift.is_some();
+    Answer {
+        verdict: verdict(findings, headline),
+        amounts: headline
+            .levels
+            .iter()
+            .filter(changed)
+            .map(|level| how_much(findings, headline, level))
+            .collect(),
+        yardstick: yardstick(findings, headline, mean_change_sd_pct),
+        timing: findings
+            .levels_c
+            .iter()
+            .enumerate()
+            .filter_map(|(at, _)| timing(findings, at))
+            .collect(),
+        elevation: elevation(findings),
+        chances: headline
+            .levels
+            .iter()
+            .filter_map(|level| could_be_hidden(findings, level))
+            .collect(),
+    }
+}
+
+/// `30-year mean 1 April SWE` or, of a date, `30-year median melt-out`.
+pub fn period_name(findings: &Findings, measure: &MeasureFindings) -> String {
+    let statistic = match measure.measure.kind {
+        Kind::AmountMm => "mean",
+        Kind::DayOfWaterYear => "median",
+    };
+    format!("{}-year {statistic} {}", findings.years, measure.measure.title)
+}
+
+fn verdict(findings: &Findings, headline: &MeasureFindings) -> String {
+    let name = period_name(findings, headline);
+    match headline.outweighs {
+        Crossing::At { level_c } => format!(
+            "From about {} °C of warming on, the warming outweighs the precipitation spread of the {name}.",
+            signed(level_c, 1)
+        ),
+        Crossing::NotReached { up_to_c } => {
+            let ratio = headline.levels.last().and_then(|level| level.signal_to_spread);
+            let ratio = ratio.map_or(String::new(), |ratio| {
+                format!(
+                    ": at {} the shift is {} times the half spread",
+                    level(up_to_c),
+                    fixed(ratio.value, 2)
+                )
+            });
+            format!(
+                "Up to {}, warming does not outweigh the precipitation spread of the {name}{ratio}.",
+                level(up_to_c)
+            )
+        }
+        Crossing::Unknown => format!(
+            "Whether warming outweighs the precipitation spread of the {name} cannot be said from this study: there is \
+             no level above the reference, or the reference does not spread."
+        ),
+    }
+}
+
+fn how_much(findings: &Findings, headline: &MeasureFindings, at: &LevelFindings) -> String {
+    let name = period_name(findings, headline);
+    let Some(shift) = at.shift else {
+        return String::new();
+    };
+    let verb = match shift.median.value {
+        change if change < 0.0 => "falls",
+        change if change > 0.0 => "rises",
+        _ => "stays",
+    };
+    let percent = at
+        .percent_change
+        .map_or(String::new(), |percent| format!(" ({} %)", signed(percent, 0)));
+    let ratio = at.signal_to_spread.map_or(String::new(), |ratio| {
+        let error = ratio
+            .monte_carlo_error
+            .map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
+        let word = if ratio.value > 1.0 {
+            "outweighs"
+        } else {
+            "does not outweigh"
+        };
+        format!(
+            "; {}{error} times the half spread, so it {word} it",
+            fixed(ratio.value, 2)
+        )
+    });
+    let by = match verb {
+        "stays" => String::new(),
+        _ => format!(" by {}", amount(shift.median.value.abs())),
+    };
+    format!(
+        "At {}, the {name} {verb}{by}{percent} in the median of {} pairs, 90 % of them between {} and {} mm{ratio}.",
+        level(at.level_c),
+        shift.pairs,
+        signed(shift.q05, amount_decimals(shift.q05)),
+        signed(shift.q95, amount_decimals(shift.q95)),
+    )
+}
+
+fn yardstick(
+    findings: &Findings,
+    headline: &MeasureFindings,
+    mean_change_sd_pct: Option<f64>,
+) -> Vec<String> {
+    let mut words = Vec::new();
+    if let Some(spread) = headline.precipitation_spread {
+        words.push(format!(
+            "Yardstick: the reference's {}, over {} realizations of {} years, with its own temperatures: median {}, 5–95 % \
+             from {} to {}. 'Outweighs' means that the warmed median leaves that range; the half spread is the part of \
+             it between the median and the end that the shift points to.",
+            period_name(findings, headline),
+            findings.realizations,
+            findings.years,
+            amount(spread.q50),
+            amount(spread.q05),
+            amount(spread.q95)
+        ));
+    }
+    words.push(match mean_change_sd_pct {
+        Some(sd) if sd > 0.0 => format!(
+            "The spread holds an assumed change of mean precipitation, normal with a standard deviation of {} %: an \
+             assumption about the future that the verdict may hang on.",
+            fixed(sd, 1)
+        ),
+        _ => "No change of mean precipitation is assumed: the spread holds only the order and choice of the record's \
+              own years."
+            .to_owned(),
+    });
+    let hangs: Vec<String> = headline
+        .levels
+        .iter()
+        .filter_map(|at| {
+            let (half_spread, one_sd) = (at.signal_to_spread?.value, at.signal_to_noise?.against_reference);
+            ((half_spread > 1.0) != (one_sd > 1.0)).then(|| {
+                format!(
+                    "{} ({} half spreads, {} standard deviations)",
+                    level(at.level_c),
+                    fixed(half_spread, 2),
+                    fixed(one_sd, 2)
+                )
+            })
+        })
+        .collect();
+    if hangs.is_empty() {
+        words.push(
+            "Measured against one standard deviation instead, as studies of emergence do, the verdict is the same at \
+             every level."
+                .to_owned(),
+        );
+    } else {
+        words.push(format!(
+            "The verdict hangs on the yardstick at {}: one standard deviation is the shorter measure that studies of \
+             emergence use.",
+            hangs.join(", ")
+        ));
+    }
+    words
+}
+
+fn timing(findings: &Findings, at: usize) -> Option<String> {
+    let of = |name: &str| {
+        let measure = findings
+            .basin
+            .iter()
+            .find(|measure| measure.measure.name == name)?;
+        Some(days_moved(measure.levels[at].shift?.median.value))
+    };
+    let (half_melted, melt_out) = (of("melt_d50_day")?, of("melt_out_day"));
+    let melt_out = melt_out.map_or(String::new(), |moved| format!(", melt-out comes {moved}"));
+    Some(format!(
+        "At {}, half of the net melt is done {half_melted}{melt_out}.",
+        level(findings.levels_c[at])
+    ))
+}
+
+/// Up to which elevation bands lose half or more of the headline measure at the level next to +2 degC.
+fn elevation(findings: &Findings) -> Option<String> {
+    let warmer = findings.reference + 1..findings.levels_c.len();
+    let at = warmer.min_by(|a, b| {
+        let distance =
+            |at: usize| (findings.levels_c[at] - findings.levels_c[findings.reference] - 2.0).abs();
+        distance(*a).total_cmp(&distance(*b))
+    })?;
+    let changes: Vec<(f64, f64, f64)> = findings
+        .bands
+        .iter()
+        .filter_map(|band| {
+            let percent = band.measures.first()?.levels[at].percent_change?;
+            Some((band.band.lower_m, band.band.upper_m, percent))
+        })
+        .collect();
+    let most = changes.iter().min_by(|a, b| a.2.total_cmp(&b.2))?;
+    let least = changes.iter().max_by(|a, b| a.2.total_cmp(&b.2))?;
+    let title = &findings.basin.first()?.measure.title;
+    Some(format!(
+        "By elevation, {title} at {} changes between {} % ({} to {} m) and {} % ({} to {} m).",
+        level(findings.levels_c[at]),
+        signed(most.2, 0),
+        fixed(most.0, 0),
+        fixed(most.1, 0),
+        signed(least.2, 0),
+        fixed(least.0, 0),
+        fixed(least.1, 0),
+    ))
+}
+
+fn could_be_hidden(findings: &Findings, at: &LevelFindings) -> Option<String> {
+    let chances = at.chances?;
+    let (period, year) = (chances.period_below_reference?, chances.year_below_reference?);
+    let reaches = chances.reaches_reference_median?;
+    Some(format!(
+        "At {}, an independent warmed {}-year mean lies below a reference one with a chance of {}, a single warmed year \
+         below a single reference year with {}; {} of these realizations reach the reference's median all the same.",
+        level(at.level_c),
+        findings.years,
+        chance(period),
+        chance(year),
+        chance(reaches)
+    ))
+}
+
+/// `97 ± 1 %`, or `above 99 %` and `below 1 %` where no realization counts for the other side.
+pub fn chance(chance: Chance) -> String {
+    let percent = 100.0 * chance.estimate.value;
+    match chance.bound {
+        Some(bound) if percent > 50.0 => format!(
+            "100 % (95 % sure of more than {} %)",
+            fixed(100.0 * (1.0 - bound), 0)
+        ),
+        Some(bound) => format!("0 % (95 % sure of less than {} %)", fixed(100.0 * bound, 0)),
+        None => {
+            let error = chance
+                .estimate
+                .monte_carlo_error
+                .map(|error| fixed(100.0 * error, 0));
+            error.map_or(format!("{} %", fixed(percent, 0)), |error| {
+                format!("{} ± {error} %", fixed(percent, 0))
+            })
+        }
+    }
+}
