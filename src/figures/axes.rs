@@ -81,6 +81,13 @@ pub(super) struct Month {
     pub begins: bool,
 }
 
+impl Month {
+    /// Whether all its days are shown.
+    pub fn is_whole(&self) -> bool {
+        self.days.end - self.days.start > 27.5
+    }
+}
+
 impl Calendar {
     /// Shows all these days, and at least `least` of them.
     pub fn around(days: Range<f64>, least: f64, starts: WaterYearStart) -> Self {

@@ -4,7 +4,7 @@ use super::labels::{
     between_levels, day_of_month, days_in_words, is_nothing, level, percent_size, sentence, size,
 };
 use crate::calendar::WaterYearStart;
-use crate::findings::{Crossing, Findings, LevelFindings, MeasureFindings};
+use crate::findings::{Crossing, Findings, MeasureFindings};
 
 /// The level that a headline speaks of: the first at which the shift outweighs the spread, else the warmest; where none
 /// is warmer than the reference, the coldest.
@@ -56,7 +56,7 @@ pub(super) fn of_amount(findings: &Findings, measure: &MeasureFindings) -> Strin
     format!("{what}; {}", against_spread(findings, measure, "the shift"))
 }
 
-/// `Half of the melt is done 12 days earlier at +2 °C and melt-out comes 15 days earlier; ...`.
+/// `Half of the melt comes 12 days and melt-out 15 days earlier at +2 °C; ...`.
 pub(super) fn of_dates(
     findings: &Findings,
     half: Option<&MeasureFindings>,
@@ -72,38 +72,53 @@ pub(super) fn of_dates(
         return Some(match date(leading) {
             Some(date) => {
                 let subject = if half.is_some() {
-                    "Half of the melt is done"
+                    "Half of the melt comes"
                 } else {
                     "Melt-out comes"
                 };
-                format!("{subject} by {date} at the reference; no other level was run")
+                format!("{subject} on {date} at the reference; no other level was run")
             }
             None => "Melt has no date at the reference; no other level was run".to_owned(),
         });
     };
     let place = level(leading.levels.get(at)?.level_c);
-    let days = |measure: Option<&MeasureFindings>| shift_in_words(measure?.levels.get(at)?);
+    let days = |measure: Option<&MeasureFindings>| {
+        let measure = measure?;
+        let level = measure.levels.get(at)?;
+        // Where most realizations have no date, the pairs that have one speak for few.
+        let reference = measure.levels.get(findings.reference)?;
+        reference.periods.q50.value().and(level.periods.q50.value())?;
+        Some(level.shift?.median.value)
+    };
     let what = match (days(half), days(out)) {
-        (Some(half), Some(out)) if half == out => {
-            format!("Half of the melt is done {half}, and so is melt-out, at {place}")
-        }
-        (Some(half), Some(out)) => {
-            format!("Half of the melt is done {half} and melt-out comes {out} at {place}")
-        }
-        (Some(half), None) => format!("Half of the melt is done {half} at {place}"),
-        (None, Some(out)) => format!("Melt-out comes {out} at {place}"),
-        (None, None) => format!("Melt has no date to compare at {place}"),
+        (Some(half), Some(out)) => both_in_words(half, out),
+        (Some(half), None) => format!("Half of the melt comes {}", days_in_words(half)),
+        (None, Some(out)) => format!("Melt-out comes {}", days_in_words(out)),
+        (None, None) => "The median realization has no melt dates to compare".to_owned(),
     };
     let subject = if half.is_some() {
         "the shift of half the melt"
     } else {
         "the shift"
     };
-    Some(format!("{what}; {}", against_spread(findings, leading, subject)))
+    Some(format!(
+        "{what} at {place}; {}",
+        against_spread(findings, leading, subject)
+    ))
 }
 
-fn shift_in_words(level: &LevelFindings) -> Option<String> {
-    level.shift.map(|shift| days_in_words(shift.median.value))
+/// Both shifts, the direction once where it is the same.
+fn both_in_words(half: f64, out: f64) -> String {
+    let [half_words, out_words] = [half, out].map(days_in_words);
+    if half_words == out_words {
+        return format!("Half of the melt and melt-out come {half_words}");
+    }
+    match (half_words.rsplit_once(' '), out_words.rsplit_once(' ')) {
+        (Some((days, one)), Some((_, other))) if one == other => {
+            format!("Half of the melt comes {days} and melt-out {out_words}")
+        }
+        _ => format!("Half of the melt comes {half_words} and melt-out {out_words}"),
+    }
 }
 
 fn against_spread(findings: &Findings, measure: &MeasureFindings, subject: &str) -> String {

@@ -9,7 +9,7 @@ const HALF_PX: f64 = 5.0;
 /// Width of the line from 5 to 95 %, px.
 const WHOLE_PX: f64 = 1.5;
 /// Half the size of a marker, px.
-const MARKER_PX: f64 = 5.5;
+const MARKER_PX: f64 = 5.0;
 /// Largest and smallest radius of a dot, px.
 const DOT_PX: [f64; 2] = [2.7, 1.6];
 
@@ -53,10 +53,9 @@ pub(super) fn marker(sheet: &Sheet, (x, y): Px, marking: Marking) -> Drawn {
             sheet.shape(&[(x, y - half), (x + half, y), (x, y + half), (x - half, y)], ink)
         }
     };
-    draw(MARKER_PX + 1.2, PAPER)?;
     draw(MARKER_PX, marking.ink)?;
     if marking.is_hollow {
-        draw(MARKER_PX - 1.8, PAPER)?;
+        draw(MARKER_PX - 1.7, PAPER)?;
     }
     Ok(())
 }
@@ -67,40 +66,83 @@ pub(super) fn arrow(sheet: &Sheet, (x, y): Px, forwards: bool, ink: RGBColor) ->
     sheet.shape(&[(x, y), (x + back, y - 4.0), (x + back, y + 4.0)], ink)
 }
 
+/// How large dots are and how far apart, px.
+#[derive(Debug, Clone, Copy)]
+pub(super) struct DotSize {
+    radius: f64,
+    apart: f64,
+}
+
+impl DotSize {
+    /// The largest dots of which every set keeps within `room_px`. Sets that even the smallest do not fit are drawn with
+    /// dots that overlap.
+    pub fn for_all(sets: &[Vec<f64>], room_px: f64) -> Self {
+        let [largest, smallest] = DOT_PX;
+        let mut radius = largest;
+        loop {
+            let size = Self {
+                radius,
+                apart: 2.0 * radius + 0.6,
+            };
+            if radius <= smallest || sets.iter().all(|heights| size.width(heights) <= room_px) {
+                return size;
+            }
+            radius = (radius - 0.1).max(smallest);
+        }
+    }
+
+    /// Width of the widest set, px.
+    pub fn widest(&self, sets: &[Vec<f64>], room_px: f64) -> f64 {
+        sets.iter()
+            .map(|heights| self.width(heights))
+            .fold(0.0, f64::max)
+            .min(room_px)
+    }
+
+    fn width(&self, heights: &[f64]) -> f64 {
+        if heights.is_empty() {
+            return 0.0;
+        }
+        last_column(&columns(heights, self.apart)) * self.apart + 2.0 * self.radius
+    }
+
+    /// Each dot's distance from the left.
+    fn arrange(&self, heights: &[f64], room_px: f64) -> Vec<f64> {
+        let columns = columns(heights, self.apart);
+        let step = if self.width(heights) <= room_px {
+            self.apart
+        } else {
+            (room_px - 2.0 * self.radius).max(0.0) / last_column(&columns)
+        };
+        columns
+            .into_iter()
+            .map(|column| self.radius + column as f64 * step)
+            .collect()
+    }
+}
+
 /// Draws dots at exactly their heights, moved to the right of `left_px` as far as they would overlap; they keep within
 /// `room_px`.
-pub(super) fn dots(sheet: &Sheet, heights: &[f64], left_px: f64, room_px: f64, marking: Marking) -> Drawn {
-    let (radius, step, columns) = arrange(heights, room_px);
-    for (height, column) in heights.iter().zip(columns) {
-        let place = (left_px + radius + column as f64 * step, *height);
+pub(super) fn dots(
+    sheet: &Sheet,
+    heights: &[f64],
+    size: DotSize,
+    [left_px, room_px]: [f64; 2],
+    marking: Marking,
+) -> Drawn {
+    for (height, across) in heights.iter().zip(size.arrange(heights, room_px)) {
+        let place = (left_px + across, *height);
         if marking.is_hollow {
-            sheet.ring(place, radius - 0.4, Stroke::solid(marking.ink, 1.2))?;
+            sheet.ring(place, size.radius - 0.4, Stroke::solid(marking.ink, 1.2))?;
         } else {
-            sheet.dot(place, radius, marking.ink)?;
+            sheet.dot(place, size.radius, marking.ink)?;
         }
     }
     Ok(())
 }
 
-/// Radius, distance of columns, and each dot's column.
-fn arrange(heights: &[f64], room_px: f64) -> (f64, f64, Vec<usize>) {
-    let [largest, smallest] = DOT_PX;
-    let mut radius = largest;
-    loop {
-        let apart = 2.0 * radius + 0.6;
-        let columns = columns(heights, apart);
-        let most = columns.iter().copied().max().unwrap_or(0) as f64;
-        let fits = most * apart + 2.0 * radius <= room_px;
-        if fits || radius <= smallest {
-            let step = if fits {
-                apart
-            } else {
-                (room_px - 2.0 * radius).max(0.0) / most
-            };
-            return (radius, step, columns);
-        }
-        radius = (radius - 0.1).max(smallest);
-    }
+fn last_column(columns: &[usize]) -> f64 {
+    columns.iter().copied().max().unwrap_or(0) as f64
 }
 
 /// The first column in which a dot keeps `apart` from the one placed there before.
@@ -128,20 +170,25 @@ mod tests {
     #[test]
     fn dots_neither_overlap_nor_leave_their_room() {
         let heights: Vec<f64> = (0..20).map(|n| 300.0 - f64::from(n * n) / 6.0).collect();
-        let (radius, step, columns) = arrange(&heights, 40.0);
-        for (at, (y, column)) in heights.iter().zip(&columns).enumerate() {
-            assert!(*column as f64 * step + 2.0 * radius <= 40.0);
-            for (other_y, other) in heights[..at].iter().zip(&columns) {
-                let across = (*column as f64 - *other as f64) * step;
-                assert!(libm::hypot(across, y - other_y) >= 2.0 * radius, "dot {at}");
+        let size = DotSize::for_all(&[heights.clone(), vec![7.0; 5]], 40.0);
+        let across = size.arrange(&heights, 40.0);
+        for (at, (x, y)) in across.iter().zip(&heights).enumerate() {
+            assert!(x + size.radius <= 40.0);
+            for (other_x, other_y) in across[..at].iter().zip(&heights) {
+                assert!(
+                    libm::hypot(x - other_x, y - other_y) >= 2.0 * size.radius,
+                    "dot {at}"
+                );
             }
         }
     }
 
     #[test]
     fn twenty_equal_dots_stay_in_their_room() {
-        let (radius, step, columns) = arrange(&[10.0; 20], 40.0);
-        assert_eq!(columns.iter().max(), Some(&19));
-        assert!(19.0 * step + 2.0 * radius <= 40.0 + 1e-9);
+        let heights = vec![10.0; 20];
+        let size = DotSize::for_all(std::slice::from_ref(&heights), 40.0);
+        let across = size.arrange(&heights, 40.0);
+        assert!(across.is_sorted_by(|a, b| a < b), "{across:?}");
+        assert!(across[19] + size.radius <= 40.0 + 1e-9);
     }
 }

@@ -3,11 +3,11 @@
 mod panel;
 mod words;
 
-use super::axes::Calendar;
+use super::axes::{Calendar, Month};
 use super::headline;
 use super::marks::Form;
 use super::page::Paragraphs;
-use super::sheet::{Drawn, HPos, Sheet, Stroke, VPos};
+use super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
 use super::theme::{EDGE, LABEL, MARGIN_PX, NOTE, WIDTH_PX};
 use super::{Figure, Setting, Svg};
 use crate::findings::{Findings, MeasureFindings};
@@ -23,6 +23,8 @@ pub(super) const FIGURE: Figure = Figure {
 
 /// Least span of the calendar, days.
 const LEAST_DAYS: f64 = 40.0;
+/// Height of a calendar below its panel, px.
+const AXIS_PX: f64 = 40.0;
 
 fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let find = |name| findings.basin.iter().find(|found| found.measure.name == name);
@@ -62,8 +64,8 @@ fn paint(
     let calendar = Calendar::around(days_drawn(panels), LEAST_DAYS, setting.water_year_starts);
     let top = MARGIN_PX + heading.height() + 26.0;
     let heights: f64 = panels.iter().map(Panel::height).sum();
-    let bottom = top + heights;
-    let below = bottom + 62.0;
+    let bottom = top + heights + AXIS_PX * panels.len() as f64;
+    let below = bottom + 28.0;
     let sheet = Sheet::new(below + key.height() + MARGIN_PX)?;
     let plot = sheet.plot((left, top), (right, bottom), calendar.days.clone(), 0.0..1.0)?;
 
@@ -78,16 +80,17 @@ fn paint(
         };
         sheet.group("measure", || panel.draw(&sheet, &area, findings))?;
         panel_top += panel.height();
+        sheet.group("axis", || {
+            calendar_axis(&sheet, &calendar, &plot, [left, right], panel_top)
+        })?;
+        panel_top += AXIS_PX;
     }
-    sheet.group("axis", || {
-        axis(
-            &sheet,
-            &calendar,
-            |day| plot.at(day, 0.0).0,
-            [left, right],
-            bottom,
-        )
-    })?;
+    let note = if is_roomy(&calendar, &plot) {
+        "Date; ticks on the 1st, 11th and 21st"
+    } else {
+        "Date; ticks on the 1st"
+    };
+    sheet.write(note, (left, bottom), NOTE, HPos::Left, VPos::Top)?;
     key.write(&sheet, below)?;
     Ok(sheet.document(FIGURE.slug, title, &words.description))
 }
@@ -101,48 +104,39 @@ fn days_drawn(panels: &[Panel<'_>]) -> std::ops::Range<f64> {
 }
 
 /// Month starts with long ticks, the months' names between them.
-fn axis(
-    sheet: &Sheet,
-    calendar: &Calendar,
-    x_of: impl Fn(f64) -> f64,
-    [left, right]: [f64; 2],
-    y: f64,
-) -> Drawn {
+fn calendar_axis(sheet: &Sheet, calendar: &Calendar, plot: &Plot, [left, right]: [f64; 2], y: f64) -> Drawn {
     let line = Stroke::solid(EDGE, 1.0);
+    let x_of = |day: f64| plot.at(day, 0.0).0;
     sheet.line(&[(left, y), (right, y)], line)?;
     let months = calendar.months();
-    let is_short = months.iter().any(|month| {
-        let is_whole = month.days.end - month.days.start > 27.0;
-        is_whole && LABEL.width(month.name) + 8.0 > x_of(month.days.end) - x_of(month.days.start)
-    });
+    let fits =
+        |month: &Month, name: &str| LABEL.width(name) + 8.0 <= x_of(month.days.end) - x_of(month.days.start);
+    let are_long = months
+        .iter()
+        .any(|month| month.is_whole() && !fits(month, month.name));
     for month in &months {
-        let [from, to] = [x_of(month.days.start), x_of(month.days.end)];
+        let from = x_of(month.days.start);
         if month.begins {
             sheet.line(&[(from, y), (from, y + 9.0)], line)?;
         }
-        let name = if is_short {
+        let name = if are_long {
             month.name.get(..3).unwrap_or(month.name)
         } else {
             month.name
         };
-        if LABEL.width(name) + 8.0 <= to - from {
-            sheet.write(
-                name,
-                ((from + to) / 2.0, y + 10.0),
-                LABEL,
-                HPos::Center,
-                VPos::Top,
-            )?;
+        if fits(month, name) {
+            let middle = (from + x_of(month.days.end)) / 2.0;
+            sheet.write(name, (middle, y + 10.0), LABEL, HPos::Center, VPos::Top)?;
         }
     }
-    let is_roomy = x_of(1.0 + calendar.days.start) - x_of(calendar.days.start) >= 1.5;
-    for day in calendar.thirds().into_iter().filter(|_| is_roomy) {
+    for day in calendar.thirds().into_iter().filter(|_| is_roomy(calendar, plot)) {
         sheet.line(&[(x_of(day), y), (x_of(day), y + 4.0)], line)?;
     }
-    let ticks = if is_roomy {
-        "date; ticks on the 1st, 11th and 21st"
-    } else {
-        "date; ticks on the 1st"
-    };
-    sheet.write(ticks, (left, y + 30.0), NOTE, HPos::Left, VPos::Top)
+    Ok(())
+}
+
+/// Whether there is room for ticks inside months.
+fn is_roomy(calendar: &Calendar, plot: &Plot) -> bool {
+    let [from, to] = [calendar.days.start, calendar.days.start + 10.0].map(|day| plot.at(day, 0.0).0);
+    to - from >= 14.0
 }

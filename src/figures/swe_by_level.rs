@@ -5,13 +5,13 @@ mod words;
 
 use super::axes::AmountTicks;
 use super::headline;
-use super::marks::{Form, Marking, dots, point_interval};
+use super::marks::{DotSize, Form, Marking, dots, point_interval};
 use super::page::Paragraphs;
 use super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
 use super::theme::{BAND, EDGE, INK, LABEL, MARGIN_PX, NAME, NOTE, WIDTH_PX, level_ink};
 use super::{Figure, Setting, Svg};
-use crate::findings::{DOTS, Distribution, Findings, MeasureFindings, Spread};
-use columns::Columns;
+use crate::findings::{DOTS, Distribution, Findings, LevelFindings, MeasureFindings, Spread};
+use columns::{BESIDE_POINT_PX, Columns};
 use words::Words;
 
 /// The figure.
@@ -70,14 +70,23 @@ fn paint(
         sheet.group("reference-band", || band(&sheet, &plot, spread, [left, right]))?;
     }
     sheet.group("axis", || axis(&sheet, &plot, &ticks, &words.axis, [left, right]))?;
-    for (at, level) in measure.levels.iter().enumerate() {
+    let heights = dot_heights(measure, &plot);
+    let room = columns.room();
+    let size = DotSize::for_all(&heights, room);
+    let reach = match size.widest(&heights, room) {
+        0.0 => 0.0,
+        width => (BESIDE_POINT_PX + width) / 2.0,
+    };
+    for (at, (level, heights)) in measure.levels.iter().zip(&heights).enumerate() {
         let marking = Marking {
             ink: level_ink(at, findings.reference, measure.levels.len()),
             form: Form::Round,
             is_hollow: at == findings.reference,
         };
+        let point = columns.centre(at) - reach;
         sheet.group("level", || {
-            column(&sheet, &plot, &level.periods, columns.span(at), marking)
+            dots(&sheet, heights, size, [point + BESIDE_POINT_PX, room], marking)?;
+            intervals(&sheet, &plot, &level.periods, point, marking)
         })?;
     }
     sheet.group("levels", || labels.write(&sheet, &columns, bottom + 12.0))?;
@@ -139,29 +148,20 @@ fn axis(sheet: &Sheet, plot: &Plot, ticks: &AmountTicks, name: &str, [left, righ
     sheet.write(name, (MARGIN_PX, ceiling - 18.0), NAME, HPos::Left, VPos::Bottom)
 }
 
-/// Point and intervals at the left of a column, dots at their right.
-fn column(
-    sheet: &Sheet,
-    plot: &Plot,
-    periods: &Distribution,
-    [left, right]: [f64; 2],
-    marking: Marking,
-) -> Drawn {
-    let width = right - left;
-    let centre = (left + right) / 2.0;
-    let point = centre - 0.2 * width.min(110.0);
-    let height = |amount: f64| plot.at(0.0, amount).1;
-    if periods.count >= DOTS {
-        let heights: Vec<f64> = periods
-            .dots
-            .iter()
-            .filter_map(|dot| dot.value())
-            .map(height)
-            .collect();
-        let first = point + 11.0;
-        dots(sheet, &heights, first, right - first - 5.0, marking)?;
-    }
+/// Heights of the dots of every level; none where there are fewer realizations than dots.
+fn dot_heights(measure: &MeasureFindings, plot: &Plot) -> Vec<Vec<f64>> {
+    let heights = |level: &LevelFindings| {
+        let dots = level.periods.dots.iter().filter(|_| level.periods.count >= DOTS);
+        dots.filter_map(|dot| dot.value())
+            .map(|amount| plot.at(0.0, amount).1)
+            .collect()
+    };
+    measure.levels.iter().map(heights).collect()
+}
+
+/// Point and intervals at the left of a column.
+fn intervals(sheet: &Sheet, plot: &Plot, periods: &Distribution, x: f64, marking: Marking) -> Drawn {
     let quantiles = [periods.q05, periods.q25, periods.q50, periods.q75, periods.q95];
-    let places = quantiles.map(|quantile| quantile.value().map(|amount| (point, height(amount))));
+    let places = quantiles.map(|quantile| quantile.value().map(|amount| (x, plot.at(0.0, amount).1)));
     point_interval(sheet, places, marking)
 }

@@ -3,15 +3,15 @@
 use super::super::labels::{day_of_month, days, level, sentence, times};
 use super::super::marks::{Form, Marking, arrow, marker, point_interval};
 use super::super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
-use super::super::theme::{BAND, EDGE, INK, LABEL, Lettering, MARGIN_PX, NAME, NOTE, level_ink};
+use super::super::theme::{BAND, EDGE, INK, LABEL, Lettering, MARGIN_PX, NAME, NOTE, WIDTH_PX, level_ink};
 use crate::calendar::WaterYearStart;
 use crate::findings::{Findings, LevelFindings, MeasureFindings};
 use crate::season::Outcome;
 use plotters::style::RGBColor;
 
-const HEADING_PX: f64 = 34.0;
+const HEADING_PX: f64 = 30.0;
 const ROW_PX: f64 = 27.0;
-const BELOW_PX: f64 = 14.0;
+const BELOW_PX: f64 = 8.0;
 
 /// Where a panel is drawn.
 pub(super) struct Area<'a> {
@@ -75,22 +75,18 @@ impl<'a> Panel<'a> {
 
     pub fn draw(&self, sheet: &Sheet, area: &Area<'_>, findings: &Findings) -> Drawn {
         let rows_top = area.top + HEADING_PX;
-        let bottom = area.top + self.height() - BELOW_PX / 2.0;
+        let bottom = area.top + self.height();
         let glyph = Marking {
             ink: INK,
             form: self.form,
             is_hollow: false,
         };
-        marker(sheet, (MARGIN_PX + 7.0, area.top + 10.0), glyph)?;
+        marker(sheet, (MARGIN_PX + 7.0, area.top + 15.5), glyph)?;
         let title = sentence(&self.measure.measure.title);
-        sheet.write(
-            &title,
-            (MARGIN_PX + 20.0, area.top + 10.0),
-            NAME,
-            HPos::Left,
-            VPos::Center,
-        )?;
-        self.band(sheet, area, [rows_top - 4.0, bottom])?;
+        let title_at = (MARGIN_PX + 20.0, area.top + 20.0);
+        sheet.write(&title, title_at, NAME, HPos::Left, VPos::Bottom)?;
+        let room_from = MARGIN_PX + 20.0 + NAME.width(&title) + 24.0;
+        self.band(sheet, area, [rows_top - 4.0, bottom], room_from)?;
         let mut top = rows_top;
         for (at, (found, lines)) in self.measure.levels.iter().zip(&self.rows).enumerate() {
             let is_reference = at == findings.reference;
@@ -118,7 +114,7 @@ impl<'a> Panel<'a> {
     }
 
     /// The reference's 5-95 % range, as far as it has dates.
-    fn band(&self, sheet: &Sheet, area: &Area<'_>, [top, bottom]: [f64; 2]) -> Drawn {
+    fn band(&self, sheet: &Sheet, area: &Area<'_>, [top, bottom]: [f64; 2], room_from: f64) -> Drawn {
         let Some(spread) = &self.measure.precipitation_spread else {
             return Ok(());
         };
@@ -132,7 +128,14 @@ impl<'a> Panel<'a> {
             width_px: 1.2,
             dash_px: Some([6, 4]),
         };
-        sheet.line(&[(middle, top), (middle, bottom)], median)
+        sheet.line(&[(middle, top), (middle, bottom)], median)?;
+        let name = "9 in 10 realizations at the reference";
+        let half = NOTE.width(name) / 2.0;
+        let x = ((from + to) / 2.0).clamp(
+            room_from + half,
+            (WIDTH_PX - MARGIN_PX - half).max(room_from + half),
+        );
+        sheet.write(name, (x, top - 6.0), NOTE, HPos::Center, VPos::Bottom)
     }
 }
 

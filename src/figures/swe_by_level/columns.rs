@@ -18,6 +18,8 @@ pub(super) struct Labels {
     beside: Vec<(usize, &'static str)>,
 }
 
+/// From a point to the first of its dots, px.
+pub(super) const BESIDE_POINT_PX: f64 = 11.0;
 /// Share of an even column that the tightest must have for levels to stand in proportion.
 const LEAST_SHARE: f64 = 0.8;
 
@@ -59,10 +61,14 @@ impl Columns {
         }
     }
 
-    /// Left and right edge of a column.
-    pub fn span(&self, at: usize) -> [f64; 2] {
-        let centre = self.centres.get(at).copied().unwrap_or(0.0);
-        [centre - self.width / 2.0, centre + self.width / 2.0]
+    /// Middle of a column.
+    pub fn centre(&self, at: usize) -> f64 {
+        self.centres.get(at).copied().unwrap_or(0.0)
+    }
+
+    /// Room for dots beside a point, the two of them in the middle of a column.
+    pub fn room(&self) -> f64 {
+        (self.width - BESIDE_POINT_PX - 14.0).max(0.0)
     }
 
     /// What is written below the columns: in words where they fit, else as bare numbers with the words at the right.
@@ -165,13 +171,9 @@ impl Labels {
             sheet.write(text, place, NOTE, HPos::Left, VPos::Center)?;
         }
         for (at, lines) in self.columns.iter().enumerate() {
-            let [left, right] = columns.span(at);
             for (line, (text, lettering)) in lines.iter().enumerate() {
                 if !text.is_empty() {
-                    let place = (
-                        (left + right) / 2.0,
-                        top_px + LABEL.leading() * (line as f64 + 0.5),
-                    );
+                    let place = (columns.centre(at), top_px + LABEL.leading() * (line as f64 + 0.5));
                     sheet.write(text, place, *lettering, HPos::Center, VPos::Center)?;
                 }
             }
