@@ -1,0 +1,181 @@
+//! Numbers as figures write them: rounded to what a reader can use, with their unit and a true minus sign.
+
+use crate::calendar::{MONTHS, WaterYearStart};
+use chrono::{Datelike, NaiveDate, TimeDelta};
+
+const MINUS: &str = "\u{2212}";
+const THIN_SPACE: char = '\u{2009}';
+
+/// `12 000`, `112`, `4.3`, `0.30`: an amount without its sign, to a tenth below 10 and a hundredth below 1.
+pub(super) fn size(amount: f64) -> String {
+    let decimals = match amount.abs() {
+        ..0.995 if amount != 0.0 => 2,
+        ..9.95 if amount != 0.0 => 1,
+        _ => 0,
+    };
+    grouped(amount.abs(), decimals)
+}
+
+/// Whether [`size`] writes it as nothing.
+pub(super) fn is_nothing(amount: f64) -> bool {
+    amount.abs() < 0.005
+}
+
+/// `+12`, `−112`, `0`.
+pub(super) fn signed(amount: f64) -> String {
+    if is_nothing(amount) {
+        "0".to_owned()
+    } else {
+        format!("{}{}", sign(amount), size(amount))
+    }
+}
+
+/// `−27 %`, `+2.3 %`.
+pub(super) fn signed_percent(percent: f64) -> String {
+    let text = percent_size(percent);
+    if text == "0" {
+        "0 %".to_owned()
+    } else {
+        format!("{}{text} %", sign(percent))
+    }
+}
+
+/// `27`, `2.3`, `0`: a percentage without its sign.
+pub(super) fn percent_size(percent: f64) -> String {
+    match percent.abs() {
+        ..0.05 => "0".to_owned(),
+        ..9.95 => grouped(percent.abs(), 1),
+        _ => grouped(percent.abs(), 0),
+    }
+}
+
+/// `+2 °C`, `−0.5 °C`, `0 °C`.
+pub(super) fn level(level_c: f64) -> String {
+    let text = grouped(level_c.abs(), 2);
+    let text = text.trim_end_matches('0').trim_end_matches('.');
+    if text.is_empty() || text == "0" {
+        "0 °C".to_owned()
+    } else {
+        format!("{}{text} °C", sign(level_c))
+    }
+}
+
+/// `+1.4 °C`: a warming between levels, to a tenth.
+pub(super) fn between_levels(level_c: f64) -> String {
+    level((level_c * 10.0).round() / 10.0)
+}
+
+/// `1.6 ×`.
+pub(super) fn times(ratio: f64) -> String {
+    format!("{} ×", grouped(ratio, if ratio < 99.95 { 1 } else { 0 }))
+}
+
+/// `12 d earlier`, `3 d later`, `same day`.
+pub(super) fn days(shift: f64) -> String {
+    let whole = grouped(shift.abs().round(), 0);
+    match (whole.as_str(), shift < 0.0) {
+        ("0", _) => "same day".to_owned(),
+        (_, true) => format!("{whole} d earlier"),
+        (_, false) => format!("{whole} d later"),
+    }
+}
+
+/// `12 days earlier`, `1 day later`, `on the same day`.
+pub(super) fn days_in_words(shift: f64) -> String {
+    let whole = grouped(shift.abs().round(), 0);
+    let unit = if whole == "1" { "day" } else { "days" };
+    match (whole.as_str(), shift < 0.0) {
+        ("0", _) => "on the same day".to_owned(),
+        (_, true) => format!("{whole} {unit} earlier"),
+        (_, false) => format!("{whole} {unit} later"),
+    }
+}
+
+/// The date of a day of the water year, counted from 1, in a year without 29 February; days outside the year run on.
+pub(super) fn date_of(starts: WaterYearStart, day: f64) -> NaiveDate {
+    // No water year that ends in 2002 holds a leap day.
+    let first = starts.first_day(2002);
+    TimeDelta::try_days(day.round() as i64 - 1)
+        .and_then(|days| first.checked_add_signed(days))
+        .unwrap_or(first)
+}
+
+/// `14 May`.
+pub(super) fn day_of_month(starts: WaterYearStart, day: f64) -> String {
+    let date = date_of(starts, day);
+    format!("{} {}", date.day(), MONTHS[date.month0() as usize])
+}
+
+/// The text with a capital at its beginning.
+pub(super) fn sentence(text: &str) -> String {
+    let mut chars = text.chars();
+    chars
+        .next()
+        .map_or_else(String::new, |first| first.to_uppercase().chain(chars).collect())
+}
+
+/// A number that is not negative, with thin spaces between thousands.
+pub(super) fn grouped(number: f64, decimals: usize) -> String {
+    let text = format!("{number:.decimals$}");
+    let (whole, fraction) = text.split_once('.').unwrap_or((&text, ""));
+    let mut grouped = String::new();
+    for (at, digit) in whole.chars().enumerate() {
+        if at > 0 && (whole.len() - at).is_multiple_of(3) {
+            grouped.push(THIN_SPACE);
+        }
+        grouped.push(digit);
+    }
+    if !fraction.is_empty() {
+        grouped.push('.');
+        grouped.push_str(fraction);
+    }
+    grouped
+}
+
+fn sign(number: f64) -> &'static str {
+    if number < 0.0 { MINUS } else { "+" }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::calendar::MonthDay;
+
+    #[test]
+    fn amounts_are_rounded_to_what_a_reader_can_use() {
+        let written = [12_000.4, 112.4, 9.96, 9.94, 1.04, 0.996, 0.3, 0.0].map(size);
+        assert_eq!(
+            written,
+            ["12\u{2009}000", "112", "10", "9.9", "1.0", "1.0", "0.30", "0"]
+        );
+        assert_eq!(signed(-112.4), "−112");
+        assert_eq!(signed(-0.001), "0");
+        assert_eq!(
+            [-26.6, 2.31, -0.01].map(signed_percent),
+            ["−27 %", "+2.3 %", "0 %"]
+        );
+    }
+
+    #[test]
+    fn levels_show_the_digits_they_have() {
+        assert_eq!(
+            [2.0, -0.5, 0.0, 1.25, 10.0].map(level),
+            ["+2 °C", "−0.5 °C", "0 °C", "+1.25 °C", "+10 °C"]
+        );
+        assert_eq!(between_levels(1.4499), "+1.4 °C");
+        assert_eq!([0.04, 1.55, 123.4].map(times), ["0.0 ×", "1.6 ×", "123 ×"]);
+    }
+
+    #[test]
+    fn days_of_the_water_year_become_dates() {
+        let starts = |month| WaterYearStart(MonthDay::new(month, 1).unwrap());
+        assert_eq!(day_of_month(starts(10), 183.0), "1 April");
+        assert_eq!(day_of_month(starts(4), 183.4), "30 September");
+        assert_eq!(day_of_month(starts(1), 60.0), "1 March");
+        assert_eq!(day_of_month(starts(10), -1.0), "29 September");
+        assert_eq!(
+            [-11.6, 3.2, 0.3].map(days),
+            ["12 d earlier", "3 d later", "same day"]
+        );
+    }
+}

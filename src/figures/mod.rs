@@ -1,0 +1,72 @@
+//! Figures: findings drawn as SVG. One file a figure, one list of figures.
+//!
+//! A figure is a pure function from [`Findings`] to bytes, and a number that is drawn is a number there. It states its
+//! finding in its title, names what it shows where it stands, and says that spread is chance.
+
+mod axes;
+mod backend;
+mod headline;
+mod labels;
+mod marks;
+mod melt_timing;
+mod page;
+mod sheet;
+mod swe_by_level;
+mod text_width;
+pub mod theme;
+
+#[cfg(test)]
+mod check;
+#[cfg(test)]
+mod colour_sight;
+
+pub use text_width::text_width;
+
+use crate::calendar::WaterYearStart;
+use crate::findings::Findings;
+
+/// A figure.
+#[derive(Debug, Clone, Copy)]
+pub struct Figure {
+    /// Its name in files and addresses.
+    pub slug: &'static str,
+    /// The question that it answers.
+    pub question: &'static str,
+    /// Draws it; nothing where the findings have not what it shows.
+    pub draw: fn(&Findings, &Setting<'_>) -> Option<Svg>,
+}
+
+/// Every figure, in the order in which a reader meets them.
+pub const FIGURES: [Figure; 2] = [swe_by_level::FIGURE, melt_timing::FIGURE];
+
+/// What a figure needs to know beside the findings.
+#[derive(Debug, Clone, Copy)]
+pub struct Setting<'a> {
+    /// Title of the study.
+    pub study_title: &'a str,
+    /// First day of its water years.
+    pub water_year_starts: WaterYearStart,
+}
+
+/// A drawn figure.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct Svg {
+    /// The whole SVG document. Its ids begin with the figure's slug.
+    pub text: String,
+    /// The finding, in words and with its numbers.
+    pub title: String,
+    /// What is shown: sample sizes, interval levels, what the band is and is not.
+    pub caption: String,
+    /// The finding and the kind of drawing, for those who do not see it.
+    pub alt: String,
+}
+
+/// `300 realizations of 30 years`.
+fn ensemble(findings: &Findings) -> String {
+    let count = |n: usize, one: &str| {
+        let plural = if n == 1 { "" } else { "s" };
+        format!("{} {one}{plural}", labels::grouped(n as f64, 0))
+    };
+    let realizations = count(findings.realizations, "realization");
+    format!("{realizations} of {}", count(findings.years, "year"))
+}
