@@ -10,6 +10,7 @@ pub mod basin;
 pub mod calendar;
 pub mod ensemble;
 pub mod fault;
+pub mod findings;
 pub mod perturb;
 pub mod season;
 pub mod snow;

@@ -7,7 +7,7 @@ mod year_blocks;
 
 pub use level::{MonthlyChange, Warming};
 pub use mean_change::mean_change_factor;
-pub use stream::stream;
+pub use stream::{resampling_stream, stream};
 pub use year_blocks::YearBlocks;
 
 use crate::weather::Series;

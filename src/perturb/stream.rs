@@ -9,3 +9,10 @@ pub fn stream(seed: u64, realization: u32) -> ChaCha8Rng {
     random.set_stream(u64::from(realization));
     random
 }
+
+/// The stream that resamples realizations for the Monte Carlo error: beyond those of all realizations.
+pub fn resampling_stream(seed: u64) -> ChaCha8Rng {
+    let mut random = ChaCha8Rng::seed_from_u64(seed);
+    random.set_stream(1 << 32);
+    random
+}

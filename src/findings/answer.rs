@@ -1,0 +1,276 @@
+//! Puts every question to an ensemble, measure by measure, for the basin and for each band.
+
+use super::chance::Chances;
+use super::crossing::{Crossing, crossing};
+use super::distribution::Distribution;
+use super::resample::{Estimate, Ranked, Resamples};
+use super::shift::{Shift, percent_change};
+use super::spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
+use super::variance::{TwoWay, VarianceShares};
+use crate::basin::Band;
+use crate::ensemble::Seasons;
+use crate::season::{Kind, Measure, Place};
+use ndarray::{ArrayView2, Axis};
+use rayon::prelude::*;
+use serde::Serialize;
+
+/// What the findings need to know beside the seasons.
+#[derive(Debug, Clone)]
+pub struct Questions<'a> {
+    /// Warming levels, ascending, degC.
+    pub levels_c: &'a [f64],
+    /// Which of them is the reference.
+    pub reference: usize,
+    /// The bands, from the lowest.
+    pub bands: &'a [Band],
+    /// Seed of the study, for the Monte Carlo error.
+    pub seed: u64,
+}
+
+/// Everything that is found.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct Findings {
+    /// Warming levels, ascending, degC.
+    pub levels_c: Vec<f64>,
+    /// Which of them is the reference.
+    pub reference: usize,
+    /// Realizations.
+    pub realizations: usize,
+    /// Water years of a realization.
+    pub years: usize,
+    /// Of the basin mean, one entry a measure, the headline's first.
+    pub basin: Vec<MeasureFindings>,
+    /// Of each band, from the lowest.
+    pub bands: Vec<BandFindings>,
+}
+
+/// Findings of one band.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct BandFindings {
+    /// The band.
+    #[serde(flatten)]
+    pub band: Band,
+    /// One entry a measure.
+    pub measures: Vec<MeasureFindings>,
+}
+
+/// Findings about one measure in one place.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct MeasureFindings {
+    /// The measure.
+    pub measure: Measure,
+    /// Spread of the period value over realizations at the reference, with its own temperatures.
+    pub precipitation_spread: Option<Spread>,
+    /// Spread over single years at the reference; for the basin alone.
+    pub weather_spread: Option<Spread>,
+    /// From which warming on the shift outweighs the precipitation spread.
+    pub outweighs: Crossing,
+    /// One entry a level, in the order of the levels.
+    pub levels: Vec<LevelFindings>,
+}
+
+/// Findings about one measure in one place at one level.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct LevelFindings {
+    /// The level, degC.
+    pub level_c: f64,
+    /// Period values over realizations.
+    pub periods: Distribution,
+    /// Single years of all realizations; for the basin alone.
+    pub single_years: Option<Distribution>,
+    /// Years with none and years whose snow never went, over all realizations.
+    pub years_undefined: [usize; 2],
+    /// Paired change from the reference.
+    pub shift: Option<Shift>,
+    /// The median change as a percentage of the reference's median; of amounts.
+    pub percent_change: Option<f64>,
+    /// Shift over the half of the reference's 5-95 % precipitation spread that it points to.
+    pub signal_to_spread: Option<Estimate>,
+    /// Against one standard deviation.
+    pub signal_to_noise: Option<SignalToNoise>,
+    /// Shares of variance over reference and level.
+    pub variance_shares: Option<VarianceShares>,
+    /// Unpaired chances; for the basin alone.
+    pub chances: Option<Chances>,
+}
+
+/// Period values `[level][realization]` of one measure in one place, and the single years where they are kept.
+struct Asked<'a> {
+    measure: &'a Measure,
+    periods: ArrayView2<'a, f64>,
+    years: Option<ndarray::ArrayView3<'a, f64>>,
+    undefined: Vec<[usize; 2]>,
+}
+
+/// Answers every question about every measure.
+pub fn answer(seasons: &Seasons, questions: &Questions<'_>) -> Findings {
+    let (_, _, realizations, years) = seasons.basin_years.dim();
+    let resamples = Resamples::new(questions.seed, realizations);
+    let in_basin: Vec<Asked<'_>> = seasons
+        .measures
+        .iter()
+        .enumerate()
+        .map(|(at, _)| of_basin(seasons, at))
+        .collect();
+    let in_bands: Vec<Asked<'_>> = (0..questions.bands.len())
+        .flat_map(|band| {
+            let everywhere = |(_, measure): &(usize, &Measure)| measure.place == Place::BandsAndBasin;
+            seasons
+                .measures
+                .iter()
+                .enumerate()
+                .filter(everywhere)
+                .map(move |(at, _)| of_band(seasons, band, at))
+        })
+        .collect();
+    let find = |asked: &Asked<'_>| asked.find(questions, &resamples);
+    let basin: Vec<MeasureFindings> = in_basin.par_iter().map(find).collect();
+    let mut of_bands = in_bands.par_iter().map(find).collect::<Vec<_>>().into_iter();
+    let measures_of_a_band = in_bands.len() / questions.bands.len();
+    Findings {
+        levels_c: questions.levels_c.to_vec(),
+        reference: questions.reference,
+        realizations,
+        years,
+        basin,
+        bands: questions
+            .bands
+            .iter()
+            .map(|band| BandFindings {
+                band: *band,
+                measures: of_bands.by_ref().take(measures_of_a_band).collect(),
+            })
+            .collect(),
+    }
+}
+
+fn of_basin(seasons: &Seasons, at: usize) -> Asked<'_> {
+    let years = seasons.basin_years.index_axis(Axis(1), at);
+    let count = |level: usize, what: f64| {
+        years
+            .index_axis(Axis(0), level)
+            .iter()
+            .filter(|value| **value == what)
+            .count()
+    };
+    let levels = years.len_of(Axis(0));
+    Asked {
+        measure: &seasons.measures[at],
+        periods: seasons.basin_periods.index_axis(Axis(1), at),
+        undefined: (0..levels)
+            .map(|level| {
+                [
+                    count(level, crate::season::NONE),
+                    count(level, crate::season::NOT_GONE),
+                ]
+            })
+            .collect(),
+        years: Some(years),
+    }
+}
+
+fn of_band(seasons: &Seasons, band: usize, at: usize) -> Asked<'_> {
+    let undefined = seasons.band_undefined.index_axis(Axis(1), band);
+    Asked {
+        measure: &seasons.measures[at],
+        periods: seasons
+            .band_periods
+            .view()
+            .index_axis_move(Axis(1), band)
+            .index_axis_move(Axis(1), at),
+        undefined: undefined
+            .index_axis(Axis(1), at)
+            .iter()
+            .map(|count| count.map(|n| n as usize))
+            .collect(),
+        years: None,
+    }
+}
+
+impl Asked<'_> {
+    fn find(&self, questions: &Questions<'_>, resamples: &Resamples) -> MeasureFindings {
+        let reference: Vec<f64> = self.periods.row(questions.reference).to_vec();
+        let spread = Spread::of(&reference);
+        let levels: Vec<LevelFindings> = (0..questions.levels_c.len())
+            .map(|level| self.find_level(level, questions, &reference, spread.as_ref(), resamples))
+            .collect();
+        let warmer: Vec<(f64, Option<f64>)> = levels[questions.reference + 1..]
+            .iter()
+            .map(|level| (level.level_c, level.signal_to_spread.map(|ratio| ratio.value)))
+            .collect();
+        let weather_spread = self.years.and_then(|years| {
+            Spread::of(
+                &years
+                    .index_axis(Axis(0), questions.reference)
+                    .iter()
+                    .copied()
+                    .collect::<Vec<_>>(),
+            )
+        });
+        MeasureFindings {
+            measure: self.measure.clone(),
+            precipitation_spread: spread,
+            weather_spread,
+            outweighs: crossing(questions.levels_c[questions.reference], &warmer),
+            levels,
+        }
+    }
+
+    fn find_level(
+        &self,
+        level: usize,
+        questions: &Questions<'_>,
+        reference: &[f64],
+        spread: Option<&Spread>,
+        resamples: &Resamples,
+    ) -> LevelFindings {
+        let warmed: Vec<f64> = self.periods.row(level).to_vec();
+        let is_reference = level == questions.reference;
+        let shift = if is_reference {
+            None
+        } else {
+            Shift::of(reference, &warmed, resamples)
+        };
+        let median_shift = shift.map(|shift| shift.median.value);
+        let years = |level: usize| {
+            self.years.map(|years| {
+                let years = years.index_axis_move(Axis(0), level);
+                Ranked::new(
+                    years
+                        .indexed_iter()
+                        .map(|((realization, _), value)| (*value, realization)),
+                )
+            })
+        };
+        LevelFindings {
+            level_c: questions.levels_c[level],
+            periods: Distribution::of(warmed.iter().copied()),
+            single_years: self
+                .years
+                .map(|years| Distribution::of(years.index_axis(Axis(0), level).iter().copied())),
+            years_undefined: self.undefined[level],
+            percent_change: match (self.measure.kind, median_shift, spread) {
+                (Kind::AmountMm, Some(change), Some(spread)) => percent_change(change, spread.q50),
+                _ => None,
+            },
+            signal_to_spread: median_shift
+                .zip(spread)
+                .and_then(|(shift, spread)| signal_to_spread(reference, &warmed, shift, spread, resamples)),
+            signal_to_noise: median_shift.and_then(|_| signal_to_noise(reference, &warmed)),
+            variance_shares: median_shift
+                .and_then(|_| TwoWay::of(&[reference, &warmed]))
+                .and_then(|table| table.shares()),
+            chances: match (is_reference, years(questions.reference), years(level)) {
+                (false, Some(reference_years), Some(warmed_years)) => Some(Chances::of(
+                    reference,
+                    &warmed,
+                    reference_years,
+                    warmed_years,
+                    resamples,
+                )),
+                _ => None,
+            },
+            shift,
+        }
+    }
+}

@@ -1,0 +1,51 @@
+//! How a measure is distributed over realizations, or over single years.
+
+use super::quantile::{quantile, sorted};
+use crate::season::{NONE, NOT_GONE, Outcome};
+use serde::Serialize;
+
+/// Dots that stand for a distribution in a figure, each for an equal share of it.
+pub const DOTS: usize = 20;
+
+/// A distribution, as quantiles of type 8.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct Distribution {
+    /// How many values.
+    pub count: usize,
+    /// Of these, with nothing to measure.
+    pub none: usize,
+    /// Of these, snow that never went.
+    pub not_gone: usize,
+    /// 5 % quantile.
+    pub q05: Outcome,
+    /// 25 % quantile.
+    pub q25: Outcome,
+    /// Median.
+    pub q50: Outcome,
+    /// 75 % quantile.
+    pub q75: Outcome,
+    /// 95 % quantile.
+    pub q95: Outcome,
+    /// Quantiles in the middle of twenty equal shares: 2.5 %, 7.5 %, up to 97.5 %.
+    pub dots: [Outcome; DOTS],
+}
+
+impl Distribution {
+    /// The distribution of the values.
+    pub fn of(values: impl IntoIterator<Item = f64>) -> Self {
+        let values = sorted(values);
+        let q = |p| Outcome::from(quantile(&values, p));
+        let count = |what: f64| values.iter().filter(|value| **value == what).count();
+        Self {
+            count: values.len(),
+            none: count(NONE),
+            not_gone: count(NOT_GONE),
+            q05: q(0.05),
+            q25: q(0.25),
+            q50: q(0.50),
+            q75: q(0.75),
+            q95: q(0.95),
+            dots: std::array::from_fn(|dot| q((dot as f64 + 0.5) / DOTS as f64)),
+        }
+    }
+}

@@ -1,0 +1,57 @@
+//! The shift: what a level changes, realization by realization.
+
+use super::quantile::{quantile, sorted};
+use super::resample::{Estimate, Ranked, Resamples};
+use serde::Serialize;
+
+/// No percentage is given of a reference median below this, mm.
+pub const LEAST_REFERENCE_MM: f64 = 10.0;
+
+/// The paired change from the reference to a level over realizations.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct Shift {
+    /// Median of the paired changes, mm or days, with its Monte Carlo error.
+    pub median: Estimate,
+    /// Their 5 % quantile.
+    pub q05: f64,
+    /// Their 95 % quantile.
+    pub q95: f64,
+    /// Pairs in which both realizations have a value.
+    pub pairs: usize,
+    /// Pairs in which one has none: counted, not used.
+    pub pairs_without_value: usize,
+}
+
+impl Shift {
+    /// The shift between period values of the same realizations; nothing where no pair has both values.
+    pub fn of(reference: &[f64], warmed: &[f64], resamples: &Resamples) -> Option<Self> {
+        let changes: Vec<(f64, usize)> = reference
+            .iter()
+            .zip(warmed)
+            .enumerate()
+            .filter(|(_, (before, after))| before.is_finite() && after.is_finite())
+            .map(|(realization, (before, after))| (after - before, realization))
+            .collect();
+        if changes.is_empty() {
+            return None;
+        }
+        let in_order = sorted(changes.iter().map(|(change, _)| *change));
+        let pairs = changes.len();
+        let ranked = Ranked::new(changes);
+        let median = resamples.estimate(quantile(&in_order, 0.5), |weights| {
+            ranked.quantiles(weights, [0.5]).map(|[median]| median)
+        });
+        Some(Self {
+            median,
+            q05: quantile(&in_order, 0.05),
+            q95: quantile(&in_order, 0.95),
+            pairs,
+            pairs_without_value: reference.len() - pairs,
+        })
+    }
+}
+
+/// `100 * median change / median reference`; nothing where the reference is below 10 mm.
+pub fn percent_change(median_change_mm: f64, median_reference_mm: f64) -> Option<f64> {
+    (median_reference_mm >= LEAST_REFERENCE_MM).then(|| 100.0 * median_change_mm / median_reference_mm)
+}
