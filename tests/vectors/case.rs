@@ -77,10 +77,11 @@ impl Case {
             let allowed = self.tolerance * if self.is_relative { expected.abs() } else { 1.0 };
             assert!(
                 (found - expected).abs() <= allowed,
-                "{}: {name}: {found} for {expected}, which may differ by {allowed} ({}; {})",
+                "{}: {name}: {found} for {expected}, which may differ by {allowed} ({}; {}; {:?})",
                 self.id,
                 self.why,
                 self.source,
+                self.standing,
             );
         }
     }
