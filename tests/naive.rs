@@ -2,7 +2,7 @@
 //!
 //! It is the only second implementation in the project. It was written from the equations and shares no line with the
 //! engine, so that where both agree neither has a slip of its own. Temperatures go through daily minima and maxima,
-//! not through means and half ranges; the degree-day factor is worked out anew every day.
+//! not through means and half ranges.
 
 use std::f64::consts::PI;
 
@@ -176,8 +176,9 @@ pub fn degree_day_factor(band: &Band, day_of_year: f64) -> f64 {
     middle + swing * libm::cos(2.0 * PI * (day_of_year - band.highest_on_day) / 365.25)
 }
 
-/// Sections 3 to 7: one day of one band, from the ice and liquid that the day before left.
-pub fn day(band: &Band, ice_mm: f64, liquid_mm: f64, day: Day) -> DayResult {
+/// Sections 3 to 7: one day of one band, from the ice and liquid that the day before left, with the day's degree-day
+/// factor.
+pub fn day(band: &Band, factor: f64, ice_mm: f64, liquid_mm: f64, day: Day) -> DayResult {
     let month = day.month - 1;
     let tmin_c = temperature(
         day.tmin_c,
@@ -211,7 +212,6 @@ pub fn day(band: &Band, ice_mm: f64, liquid_mm: f64, day: Day) -> DayResult {
     let (mut ice_mm, mut liquid_mm) = (ice_mm, liquid_mm);
     ice_mm += snow_mm;
 
-    let factor = degree_day_factor(band, day.day_of_year);
     let (above, below) = match band.degrees {
         Degrees::Mean => mean_degrees(mean_c, band.melt_base_c),
         Degrees::Diurnal => sine_degrees(tmin_c, tmax_c, band.melt_base_c),
@@ -254,7 +254,8 @@ pub fn run(band: &Band, days: &[Day], starts_bare: &[bool]) -> Vec<DayResult> {
         if *is_bare {
             (ice_mm, liquid_mm) = (0.0, 0.0);
         }
-        let result = day(band, ice_mm, liquid_mm, *weather);
+        let factor = degree_day_factor(band, weather.day_of_year);
+        let result = day(band, factor, ice_mm, liquid_mm, *weather);
         (ice_mm, liquid_mm) = (result.ice_mm, result.liquid_mm);
         results.push(result);
     }
