@@ -8,10 +8,13 @@
 
 pub mod basin;
 pub mod calendar;
+pub mod cli;
 pub mod ensemble;
 pub mod fault;
 pub mod findings;
 pub mod perturb;
+pub mod report;
+pub mod scenario;
 pub mod season;
 pub mod snow;
 pub mod table;

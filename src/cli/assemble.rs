@@ -1,0 +1,147 @@
+//! From a scenario's path to everything a command needs, or all faults of the scenario and its data in one go.
+
+use super::arguments::Shared;
+use super::failure::Failure;
+use super::input::{InputFile, ScenarioFile, read_data, read_scenario};
+use crate::basin::{Basin, read_bands};
+use crate::fault::{Fault, Unlikely};
+use crate::perturb::MonthlyChange;
+use crate::scenario::{DefaultInForce, Document, Draft, Drawing, Scenario, draw, located};
+use crate::snow::{LaneSpec, Lanes, correct_catch};
+use crate::weather::{Record, Series};
+use std::path::Path;
+
+/// What a command works with.
+pub(super) struct Ready {
+    pub scenario: Scenario,
+    pub basin: Basin,
+    /// The record, its precipitation as the gauge caught it.
+    pub record: Record,
+    /// The usable years, precipitation corrected for catch.
+    pub weather: Series,
+    pub unlikely: Vec<Unlikely>,
+    pub defaults: Vec<DefaultInForce>,
+    /// The scenario, the bands, the weather, as read.
+    pub files: Vec<InputFile>,
+    /// The last part of the scenario's name without the ending.
+    pub stem: Option<String>,
+}
+
+/// Reads the scenario and the files it names, and checks them all.
+pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
+    let ScenarioFile { file, folder, stem } = read_scenario(path)?;
+    let document = Document::parse(&file.text);
+    let mut draft = crate::scenario::read(&document);
+    if let Some(seed) = shared.seed {
+        draft.seed = seed;
+    }
+    let mut faults = std::mem::take(&mut draft.faults);
+    let bands = take(read_bands_of(&draft, &folder), &mut faults).flatten();
+    let record = take(read_record_of(&draft, &folder), &mut faults).flatten();
+    match (draft.complete(), bands, record) {
+        (Some(scenario), Some((bands, bands_file)), Some((record, weather_file))) if faults.is_empty() => {
+            let basin = Basin {
+                latitude_deg: scenario.basin.latitude_deg,
+                bands,
+                temperature: scenario.basin.temperature.clone(),
+                precipitation: scenario.basin.precipitation,
+            };
+            let mut weather = record.series.clone();
+            correct_catch(
+                &mut weather,
+                scenario.weather.gauge_multiplier,
+                scenario.snow.rain_snow,
+            );
+            let files = vec![file.clone(), bands_file, weather_file];
+            let (unlikely, defaults) = (draft.unlikely, draft.defaults);
+            Ok(Ready {
+                scenario,
+                basin,
+                record,
+                weather,
+                unlikely,
+                defaults,
+                files,
+                stem,
+            })
+        }
+        _ => Err(input_failure(
+            &faults,
+            &file.name,
+            &file.text,
+            shared.is_coloured(),
+        )),
+    }
+}
+
+fn read_bands_of(
+    draft: &Draft,
+    folder: &Path,
+) -> Result<Option<(Vec<crate::basin::Band>, InputFile)>, Vec<Fault>> {
+    let Some(basin) = &draft.basin else {
+        return Ok(None);
+    };
+    let file = read_data(folder, &basin.bands_file, "basin.bands").map_err(|fault| vec![fault])?;
+    let bands = read_bands(&file.name, &file.text)?;
+    Ok(Some((bands, file)))
+}
+
+fn read_record_of(draft: &Draft, folder: &Path) -> Result<Option<(Record, InputFile)>, Vec<Fault>> {
+    let (Some(typed), Some(season)) = (&draft.weather, &draft.season) else {
+        return Ok(None);
+    };
+    let file = read_data(folder, &typed.file, "weather.file").map_err(|fault| vec![fault])?;
+    let start = season.water_year_starts;
+    let record = crate::weather::read(
+        &file.name,
+        &file.text,
+        &typed.columns,
+        start,
+        season.survey_dates[0],
+        typed.limits,
+    )?;
+    Ok(Some((record, file)))
+}
+
+fn take<T>(result: Result<T, Vec<Fault>>, faults: &mut Vec<Fault>) -> Option<T> {
+    result.map_err(|more| faults.extend(more)).ok()
+}
+
+/// Faults as a failure, drawn against the scenario's text.
+pub(super) fn input_failure(faults: &[Fault], file: &str, text: &str, is_coloured: bool) -> Failure {
+    let document = Document::parse(text);
+    let drawing = Drawing {
+        file,
+        text,
+        document: &document,
+        is_coloured,
+    };
+    Failure::Input {
+        drawn: draw(faults, &drawing),
+        faults: faults.iter().map(|fault| located(fault, &drawing)).collect(),
+    }
+}
+
+impl Ready {
+    /// Lanes of every band under each change, and a basin mean for each.
+    pub fn lanes(&self, changes: &[MonthlyChange]) -> Lanes {
+        let shares = self.basin.shares();
+        let groups: Vec<Vec<LaneSpec<'_>>> = changes
+            .iter()
+            .map(|change| {
+                let bands = self.basin.bands.iter().zip(&shares);
+                bands
+                    .map(|(band, share)| LaneSpec {
+                        basin: &self.basin,
+                        station_m: self.scenario.weather.station_elevation_m,
+                        elevation_m: band.elevation_m,
+                        change,
+                        snow: &self.scenario.snow,
+                        share: *share,
+                    })
+                    .collect()
+            })
+            .collect();
+        Lanes::new(&groups)
+    }
+}

@@ -1,0 +1,42 @@
+//! The command line: what was typed, one file a command, and how each ends.
+
+mod arguments;
+mod assemble;
+mod check;
+mod daily;
+mod failure;
+mod input;
+mod output;
+
+pub use failure::{Failure, status};
+
+use arguments::{Arguments, Command};
+use clap::Parser;
+use clap::error::ErrorKind;
+
+/// Runs the program and gives its exit status: 0 done, 1 a fault of ours, 2 command line, 3 the scenario or its data,
+/// 4 the file system, 130 interrupted.
+pub fn run() -> u8 {
+    let arguments = match Arguments::try_parse() {
+        Ok(arguments) => arguments,
+        Err(error) => {
+            let printed = error.print();
+            let is_help = matches!(error.kind(), ErrorKind::DisplayHelp | ErrorKind::DisplayVersion);
+            return match (is_help, printed) {
+                (true, Ok(())) => status::DONE,
+                (true, Err(_)) => status::FILE_SYSTEM,
+                (false, _) => status::COMMAND_LINE,
+            };
+        }
+    };
+    let shared = arguments.shared;
+    let result = match arguments.command {
+        Command::Daily { scenario } => daily::run(&scenario, &shared),
+        Command::Check { scenario } => check::run(&scenario, &shared),
+        _ => return 1,
+    };
+    match result {
+        Ok(()) => status::DONE,
+        Err(failure) => failure.report(&shared),
+    }
+}

@@ -1,0 +1,110 @@
+//! The scenario's text, parsed, with the place of every key and value.
+
+use super::section::{Notes, Section};
+use crate::fault::{Fault, Place};
+use std::collections::HashMap;
+use std::ops::Range;
+use toml::de::{DeTable, DeValue};
+
+/// Where a key and its value stand, in bytes.
+#[derive(Debug, Clone)]
+struct KeyPlace {
+    key: Range<usize>,
+    value: Range<usize>,
+}
+
+/// A parsed scenario.
+#[derive(Debug)]
+pub struct Document<'t> {
+    table: DeTable<'t>,
+    places: HashMap<String, KeyPlace>,
+    syntax_faults: Vec<Fault>,
+}
+
+impl<'t> Document<'t> {
+    /// Parses a scenario's text as TOML. Syntax faults are kept beside what could be read.
+    pub fn parse(text: &'t str) -> Self {
+        let (table, errors) = DeTable::parse_recoverable(text);
+        let table = table.into_inner();
+        let syntax_faults = errors
+            .iter()
+            .map(|error| Fault {
+                place: Place::Span(error.span().unwrap_or(0..0)),
+                found: error.message().to_owned(),
+                expected: "TOML: key = value, one a line, under [table] lines".to_owned(),
+                mend: "quote texts, write lists in [ ], and name each key once".to_owned(),
+            })
+            .collect();
+        let mut places = HashMap::new();
+        note_places("", &table, &mut places);
+        Self {
+            table,
+            places,
+            syntax_faults,
+        }
+    }
+
+    /// Faults of the text as TOML.
+    pub fn syntax_faults(&self) -> &[Fault] {
+        &self.syntax_faults
+    }
+
+    /// Bytes of a key's value; of the nearest table above where the key was not typed; nothing where neither was.
+    pub fn value_span(&self, key: &str) -> Option<Range<usize>> {
+        let mut path = key;
+        loop {
+            if let Some(place) = self.places.get(path) {
+                return Some(if path == key {
+                    place.value.clone()
+                } else {
+                    place.key.clone()
+                });
+            }
+            path = &path[..path.rfind(['.', '['])?];
+        }
+    }
+
+    pub(super) fn key_span(&self, key: &str) -> Range<usize> {
+        self.places.get(key).map_or(0..0, |place| place.key.clone())
+    }
+
+    pub(super) fn top<'d>(&'d self, notes: &'d Notes) -> Section<'d> {
+        Section::new(self, notes, String::new(), Some(&self.table))
+    }
+}
+
+fn note_places(path: &str, table: &DeTable<'_>, places: &mut HashMap<String, KeyPlace>) {
+    for (key, value) in table {
+        let path = if path.is_empty() {
+            key.get_ref().to_string()
+        } else {
+            format!("{path}.{}", key.get_ref())
+        };
+        places.insert(
+            path.clone(),
+            KeyPlace {
+                key: key.span(),
+                value: value.span(),
+            },
+        );
+        note_inside(&path, value.get_ref(), places);
+    }
+}
+
+fn note_inside(path: &str, value: &DeValue<'_>, places: &mut HashMap<String, KeyPlace>) {
+    match value {
+        DeValue::Table(table) => note_places(path, table, places),
+        DeValue::Array(array) => {
+            for (number, element) in array.iter().enumerate() {
+                let path = format!("{path}[{number}]");
+                let place = KeyPlace {
+                    key: element.span(),
+                    value: element.span(),
+                };
+                places.insert(path.clone(), place);
+                note_inside(&path, element.get_ref(), places);
+            }
+        }
+        _ => {}
+    }
+}

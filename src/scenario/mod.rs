@@ -1,0 +1,120 @@
+//! The scenario: what was typed becomes the plain types that the rooms below own and check.
+//!
+//! `document` parses the text and remembers where every key stands; `section` reads typed values and collects every
+//! fault and every default in force; one file a table of the scenario; `draw` shows faults in their place. Only `cli`
+//! imports this room.
+
+mod basin;
+mod document;
+mod draw;
+mod nearest;
+mod realizations;
+mod season;
+mod section;
+mod snow;
+mod warming;
+mod weather;
+
+pub use basin::BasinTyped;
+pub use document::Document;
+pub use draw::{Drawing, Located, draw, located, unlikely_lines};
+pub use realizations::RealizationsTyped;
+pub use section::DefaultInForce;
+pub use warming::WarmingTyped;
+pub use weather::WeatherTyped;
+
+use crate::fault::{Fault, Unlikely};
+use crate::season::SeasonSettings;
+use crate::snow::SnowParams;
+use section::Notes;
+
+/// Everything a scenario says, checked.
+#[derive(Debug, Clone)]
+pub struct Scenario {
+    /// The study's title.
+    pub title: String,
+    /// Seed of every random number.
+    pub seed: u64,
+    /// The basin, but for its bands.
+    pub basin: BasinTyped,
+    /// The station's file and how to read it.
+    pub weather: WeatherTyped,
+    /// Dates and windows.
+    pub season: SeasonSettings,
+    /// Snow parameters.
+    pub snow: SnowParams,
+    /// Warming levels.
+    pub warming: WarmingTyped,
+    /// Realizations.
+    pub realizations: RealizationsTyped,
+}
+
+/// What could be read of a scenario, part by part: a part with a fault is missing, the others can still be used to look
+/// for more faults in the files they name.
+#[derive(Debug)]
+pub struct Draft {
+    /// The title.
+    pub title: Option<String>,
+    /// The seed.
+    pub seed: u64,
+    /// `[basin]`.
+    pub basin: Option<BasinTyped>,
+    /// `[weather]`.
+    pub weather: Option<WeatherTyped>,
+    /// `[season]`.
+    pub season: Option<SeasonSettings>,
+    /// `[snow]`.
+    pub snow: Option<SnowParams>,
+    /// `[warming]`.
+    pub warming: Option<WarmingTyped>,
+    /// `[realizations]`.
+    pub realizations: Option<RealizationsTyped>,
+    /// Every fault of the text.
+    pub faults: Vec<Fault>,
+    /// What is allowed but unlikely.
+    pub unlikely: Vec<Unlikely>,
+    /// Every default that is in force.
+    pub defaults: Vec<DefaultInForce>,
+}
+
+impl Draft {
+    /// The whole scenario, where every part could be read.
+    pub fn complete(&self) -> Option<Scenario> {
+        Some(Scenario {
+            title: self.title.clone()?,
+            seed: self.seed,
+            basin: self.basin.clone()?,
+            weather: self.weather.clone()?,
+            season: self.season.clone()?,
+            snow: self.snow?,
+            warming: self.warming.clone()?,
+            realizations: self.realizations.clone()?,
+        })
+    }
+}
+
+/// Reads a scenario and collects all its faults.
+pub fn read(document: &Document<'_>) -> Draft {
+    let notes = Notes::default();
+    notes
+        .faults
+        .borrow_mut()
+        .extend(document.syntax_faults().iter().cloned());
+    let mut top = document.top(&notes);
+    let title = top.required_text("title", "a name for the study", "add title = \"...\" at the top");
+    let seed = top.whole_or("seed", 1, 0..=i64::MAX as u64);
+    let basin = basin::read(top.required_section("basin"));
+    let is_southern = basin.as_ref().is_some_and(|basin| basin.latitude_deg < 0.0);
+    let weather = weather::read(top.required_section("weather"));
+    let has_daily_range = weather.as_ref().is_none_or(WeatherTyped::has_daily_range);
+    let season = season::read(top.section("season"), is_southern);
+    let snow = snow::read(top.section("snow"), has_daily_range, is_southern);
+    let warming = warming::read(top.section("warming"));
+    let realizations = realizations::read(top.section("realizations"));
+    top.finish();
+    if document.syntax_faults().is_empty() {
+        notes.into_draft(title, seed, (basin, weather, season, snow, warming, realizations))
+    } else {
+        notes.into_draft(title, seed, (None, None, None, None, None, None))
+    }
+}

@@ -1,0 +1,52 @@
+//! The known word that a mistyped one most likely meant.
+
+/// The nearest of `known` by the fewest letters changed, added, dropped or exchanged with their neighbour; none where
+/// even the nearest is far.
+pub(super) fn nearest<'k>(typed: &str, known: impl IntoIterator<Item = &'k str>) -> Option<&'k str> {
+    let close_enough = (typed.chars().count() / 3).max(2);
+    known
+        .into_iter()
+        .map(|word| (distance(typed, word), word))
+        .filter(|(distance, word)| {
+            *distance <= close_enough || word.starts_with(typed) || typed.starts_with(word)
+        })
+        .min_by_key(|(distance, _)| *distance)
+        .map(|(_, word)| word)
+}
+
+fn distance(a: &str, b: &str) -> usize {
+    let (a, b): (Vec<char>, Vec<char>) = (a.chars().collect(), b.chars().collect());
+    let mut table = vec![vec![0; b.len() + 1]; a.len() + 1];
+    for (i, row) in table.iter_mut().enumerate() {
+        row[0] = i;
+    }
+    for j in 0..=b.len() {
+        table[0][j] = j;
+    }
+    for i in 1..=a.len() {
+        for j in 1..=b.len() {
+            let change = usize::from(a[i - 1] != b[j - 1]);
+            let mut least = (table[i - 1][j] + 1)
+                .min(table[i][j - 1] + 1)
+                .min(table[i - 1][j - 1] + change);
+            if i > 1 && j > 1 && a[i - 1] == b[j - 2] && a[i - 2] == b[j - 1] {
+                least = least.min(table[i - 2][j - 2] + 1);
+            }
+            table[i][j] = least;
+        }
+    }
+    table[a.len()][b.len()]
+}
+
+#[cfg(test)]
+mod tests {
+    use super::nearest;
+
+    #[test]
+    fn slips_are_recognised_and_strangers_are_not() {
+        let known = ["melt_base_c", "degree_rule", "rain_snow"];
+        assert_eq!(nearest("melt_bsae_c", known), Some("melt_base_c"));
+        assert_eq!(nearest("degree", known), Some("degree_rule"));
+        assert_eq!(nearest("albedo", known), None);
+    }
+}

@@ -1,0 +1,256 @@
+//! `[weather]`: the station's file and how to read it.
+
+use super::section::Section;
+use crate::fault::Fault;
+use crate::snow::GaugeMultiplier;
+use crate::table::Format;
+use crate::units::{DepthUnit, TemperatureUnit};
+use crate::weather::{
+    Columns, Gauge, Limits, PrecipitationColumn, Reading, TemperatureColumn, TemperatureColumns,
+};
+use chrono::format::{Item, StrftimeItems};
+
+/// The station's file as typed.
+#[derive(Debug, Clone)]
+pub struct WeatherTyped {
+    /// The file, relative to the scenario.
+    pub file: String,
+    /// Elevation of the station, m.
+    pub station_elevation_m: f64,
+    /// Columns, units, marks.
+    pub columns: Columns,
+    /// Gauge catch.
+    pub gauge_multiplier: GaugeMultiplier,
+    /// Limits of the screening.
+    pub limits: Limits,
+}
+
+impl WeatherTyped {
+    /// Whether the file has daily minima and maxima.
+    pub fn has_daily_range(&self) -> bool {
+        matches!(self.columns.temperature, TemperatureColumns::Extremes { .. })
+    }
+}
+
+/// A fall of an accumulating gauge beyond this is a reset, mm.
+const RESET_TOLERANCE_MM: f64 = 50.0;
+
+pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
+    let file = section.required_text(
+        "file",
+        "the path of the station's CSV file",
+        "add file = \"weather.csv\"",
+    );
+    let station_elevation_m = section.required_number(
+        "station_elevation_m",
+        -500.0..=9000.0,
+        "add it, in metres above the sea",
+    );
+    let date = read_date(section.section("date"));
+    let temperature = read_temperatures(&mut section);
+    let precipitation = read_precipitation(section.required_section("precipitation"));
+    let gauge_multiplier = read_multiplier(&mut section);
+    let format = read_format(&mut section);
+    let missing = section.texts("missing").unwrap_or_else(|| {
+        let marks = ["", "NA", "-9999", "-99.9"];
+        if !section.has("missing") {
+            section.default("missing", format!("{marks:?}"));
+        }
+        marks.map(str::to_owned).to_vec()
+    });
+    let default = Limits::default();
+    let limits = Limits {
+        temperature_gap_days: section.whole_or(
+            "temperature_gap_days",
+            default.temperature_gap_days as u64,
+            0..=30,
+        ) as usize,
+        missing_days_allowed: section.whole_or(
+            "missing_days_allowed",
+            default.missing_days_allowed as u64,
+            0..=366,
+        ) as usize,
+        season_mean_departure_c: section.number_or(
+            "season_mean_departure_c",
+            default.season_mean_departure_c,
+            0.0..=100.0,
+            "degC by which a season's mean may differ from the record's median; 6 is the default",
+        ),
+    };
+    section.finish();
+    let (date, date_format) = date?;
+    Some(WeatherTyped {
+        file: file?,
+        station_elevation_m: station_elevation_m?,
+        columns: Columns {
+            date,
+            date_format,
+            temperature: temperature?,
+            precipitation: precipitation?,
+            format: format?,
+            missing,
+        },
+        gauge_multiplier: gauge_multiplier?,
+        limits,
+    })
+}
+
+fn read_date(mut section: Section<'_>) -> Option<(String, String)> {
+    let column = section.text_or("column", "date");
+    let format = section.text_or("format", "%Y-%m-%d");
+    let is_sound = StrftimeItems::new(&format).all(|item| !matches!(item, Item::Error));
+    if !is_sound {
+        section.fault(Fault::key(
+            section.path_of("format"),
+            format!("{format:?}"),
+            "a date format in the signs of strftime",
+            "for example \"%Y-%m-%d\" or \"%m/%d/%Y\"",
+        ));
+    }
+    section.finish();
+    is_sound.then_some((column, format))
+}
+
+fn read_temperatures(section: &mut Section<'_>) -> Option<TemperatureColumns> {
+    let has = ["tmin", "tmax", "tmean"].map(|key| section.has(key));
+    match has {
+        [false, false, true] => {
+            let mean = read_temperature(section.section("tmean"));
+            Some(TemperatureColumns::MeanAlone(mean?))
+        }
+        [false, false, false] => {
+            section.section("tmean");
+            let (tmin, tmax) = (section.required_section("tmin"), section.required_section("tmax"));
+            drop((tmin, tmax));
+            None
+        }
+        [_, _, has_mean] => {
+            if has_mean {
+                section.fault(Fault::key(
+                    section.path_of("tmean"),
+                    "tmean beside tmin and tmax",
+                    "tmin and tmax, or tmean alone",
+                    "take tmean out; the daily mean is (tmin + tmax)/2",
+                ));
+                section.section("tmean");
+            }
+            let tmin = read_temperature(section.required_section("tmin"));
+            let tmax = read_temperature(section.required_section("tmax"));
+            Some(TemperatureColumns::Extremes {
+                tmin: tmin?,
+                tmax: tmax?,
+            })
+        }
+    }
+}
+
+fn read_temperature(mut section: Section<'_>) -> Option<TemperatureColumn> {
+    let column = section.required_text(
+        "column",
+        "the column's name in the header",
+        "add column = \"...\"",
+    );
+    let unit = section.choice("unit", &TemperatureUnit::NAMES);
+    if unit.is_none() && !section.has("unit") {
+        section.required_text("unit", "\"degC\", \"degF\" or \"K\"", "add unit = \"degC\"");
+    }
+    section.finish();
+    Some(TemperatureColumn {
+        column: column?,
+        unit: unit?,
+    })
+}
+
+fn read_precipitation(mut section: Section<'_>) -> Option<PrecipitationColumn> {
+    let column = section.required_text(
+        "column",
+        "the column's name in the header",
+        "add column = \"...\"",
+    );
+    let unit = section.choice("unit", &DepthUnit::NAMES);
+    if unit.is_none() && !section.has("unit") {
+        section.required_text("unit", "\"mm\", \"cm\" or \"in\"", "add unit = \"mm\"");
+    }
+    let is_accumulating = if section.has("gauge") {
+        section.choice("gauge", &[("daily", false), ("accumulating", true)])
+    } else {
+        section.text_or("gauge", "daily");
+        Some(false)
+    };
+    let gauge = if is_accumulating == Some(true) {
+        let readings = [
+            ("start-of-day", Reading::StartOfDay),
+            ("end-of-day", Reading::EndOfDay),
+        ];
+        let reading = section.choice("reading", &readings);
+        if reading.is_none() && !section.has("reading") {
+            section.required_text(
+                "reading",
+                "\"start-of-day\" or \"end-of-day\"",
+                "say when an accumulating gauge is read: it decides to which day its water belongs",
+            );
+        }
+        let reset_tolerance_mm = section.number_or(
+            "reset_tolerance_mm",
+            RESET_TOLERANCE_MM,
+            0.0..=2000.0,
+            "a fall beyond it means that the gauge was set back",
+        );
+        reading.map(|reading| Gauge::Accumulating {
+            reading,
+            reset_tolerance_mm,
+        })
+    } else {
+        is_accumulating.map(|_| Gauge::Daily)
+    };
+    section.finish();
+    Some(PrecipitationColumn {
+        column: column?,
+        unit: unit?,
+        gauge: gauge?,
+    })
+}
+
+fn read_multiplier(section: &mut Section<'_>) -> Option<GaugeMultiplier> {
+    let mend = "1.1 says that 10 % more fell than was caught";
+    let mut multiplier = section.section("gauge_multiplier");
+    let typed = GaugeMultiplier {
+        rain: multiplier.number_or("rain", GaugeMultiplier::NONE.rain, f64::MIN..=f64::MAX, mend),
+        snow: multiplier.number_or("snow", GaugeMultiplier::NONE.snow, f64::MIN..=f64::MAX, mend),
+    };
+    multiplier.finish();
+    match typed.check() {
+        Ok(unlikely) => {
+            section.notes.unlikely.borrow_mut().extend(unlikely);
+            Some(typed)
+        }
+        Err(faults) => {
+            faults.into_iter().for_each(|fault| section.fault(fault));
+            None
+        }
+    }
+}
+
+fn read_format(section: &mut Section<'_>) -> Option<Format> {
+    let one_byte = |section: &Section<'_>, key: &str, text: &str| match text.as_bytes() {
+        [byte] if byte.is_ascii() => Some(*byte),
+        _ => {
+            section.fault(Fault::key(
+                section.path_of(key),
+                format!("{text:?}"),
+                "one plain character",
+                "for example \",\" or \";\" or \"\\t\"",
+            ));
+            None
+        }
+    };
+    let separator = section.text_or("separator", ",");
+    let comment = section.text_or("comment", "#");
+    let separator = one_byte(section, "separator", &separator)?;
+    let comment = if comment.is_empty() {
+        None
+    } else {
+        Some(one_byte(section, "comment", &comment)?)
+    };
+    Some(Format { separator, comment })
+}
