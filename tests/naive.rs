@@ -116,7 +116,11 @@ pub fn precipitation(station_mm: f64, band: &Band) -> f64 {
         station_m = band.precipitation_top_m;
     }
     let multiplier = 1.0 + band.precipitation_gradient_per_100m * (elevation_m - station_m) / 100.0;
-    if multiplier < 0.0 { 0.0 } else { changed * multiplier }
+    if multiplier < 0.0 {
+        0.0
+    } else {
+        changed * multiplier
+    }
 }
 
 /// Section 5: the share that falls as snow.
@@ -220,7 +224,11 @@ pub fn day(band: &Band, factor: f64, ice_mm: f64, liquid_mm: f64, day: Day) -> D
     if mean_c > 0.0 {
         potential_mm += 0.0125 * rain_mm * mean_c;
     }
-    result.melt_mm = if potential_mm > ice_mm { ice_mm } else { potential_mm };
+    result.melt_mm = if potential_mm > ice_mm {
+        ice_mm
+    } else {
+        potential_mm
+    };
     ice_mm -= result.melt_mm;
 
     liquid_mm += result.melt_mm + rain_mm;

@@ -31,14 +31,12 @@ proptest! {
         let blocks = Scenario::run(&lanes, &series, Path::Widest);
         let (days, starts_bare) = naive_days(&series);
         let areas: Vec<f64> = scenario.basin.bands.iter().map(|band| band.area_km2).collect();
-        let mut lane = 0;
         for (mix, level_c) in scenario.levels_c.iter().enumerate() {
             let mut bands = Vec::new();
             for band in 0..areas.len() {
                 let naive = naive::run(&scenario.naive_band(band, *level_c), &days, &starts_bare);
-                check_lane(&blocks, &series, lane, &naive)?;
+                check_lane(&blocks, &series, lanes.column(mix, band), &naive)?;
                 bands.push(naive);
-                lane += 1;
             }
             check_basin(&blocks, &series, mix, &bands, &areas)?;
         }
@@ -70,14 +68,23 @@ fn check_lane(
                 ("SWE", block.swe_mm[at], expected.swe_mm),
                 ("net melt", block.net_melt_mm[at], net_melt),
                 ("outflow", block.outflow_mm[at], expected.outflow_mm),
-                ("bare-ground rain", block.bare_ground_rain_mm[at], expected.bare_ground_rain_mm),
+                (
+                    "bare-ground rain",
+                    block.bare_ground_rain_mm[at],
+                    expected.bare_ground_rain_mm,
+                ),
             ] {
                 assert_same(engine, naive, what, day + 1)?;
             }
         }
         let last = &naive[year.start + year.days - 1];
         let end = block.swe_mm[year.days * block.width + lane];
-        assert_same(end, last.ice_mm + last.liquid_mm, "SWE as the year ends", year.days)?;
+        assert_same(
+            end,
+            last.ice_mm + last.liquid_mm,
+            "SWE as the year ends",
+            year.days,
+        )?;
     }
     Ok(())
 }
@@ -98,9 +105,17 @@ fn check_basin(
             let at = day * block.width + block.mixes_at + mix;
             for (what, engine, naive) in [
                 ("basin SWE", block.swe_mm[at], mean(|r| r.swe_mm)),
-                ("basin net melt", block.net_melt_mm[at], mean(|r| r.melt_mm - r.refreeze_mm)),
+                (
+                    "basin net melt",
+                    block.net_melt_mm[at],
+                    mean(|r| r.melt_mm - r.refreeze_mm),
+                ),
                 ("basin outflow", block.outflow_mm[at], mean(|r| r.outflow_mm)),
-                ("basin bare-ground rain", block.bare_ground_rain_mm[at], mean(|r| r.bare_ground_rain_mm)),
+                (
+                    "basin bare-ground rain",
+                    block.bare_ground_rain_mm[at],
+                    mean(|r| r.bare_ground_rain_mm),
+                ),
             ] {
                 assert_same(engine, naive, what, day + 1)?;
             }
@@ -111,7 +126,12 @@ fn check_basin(
             .map(|last| last.ice_mm + last.liquid_mm)
             .collect();
         let end = block.swe_mm[year.days * block.width + block.mixes_at + mix];
-        assert_same(end, naive::basin_mean(&at_end, areas), "basin SWE as the year ends", year.days)?;
+        assert_same(
+            end,
+            naive::basin_mean(&at_end, areas),
+            "basin SWE as the year ends",
+            year.days,
+        )?;
     }
     Ok(())
 }

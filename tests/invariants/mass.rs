@@ -62,10 +62,11 @@ proptest! {
         let bands = scenario.basin.bands.len();
         for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
             let detail = block.detail.as_ref().expect("detail was asked for");
-            for at in (0..block.days).flat_map(|day| (0..bands).map(move |band| day * detail.width + band)) {
-                let (cool, warm) = (detail.snow_mm[at], detail.snow_mm[at + bands]);
+            for (day, band) in (0..block.days).flat_map(|day| (0..bands).map(move |band| (day, band))) {
+                let [at_cool, at_warm] = [0, 1].map(|group| day * detail.width + lanes.column(group, band));
+                let (cool, warm) = (detail.snow_mm[at_cool], detail.snow_mm[at_warm]);
                 prop_assert!(warm <= cool, "warming by {more_c} degC turned {cool} mm of snow into {warm} mm");
-                let (cool_all, warm_all) = (cool + detail.rain_mm[at], warm + detail.rain_mm[at + bands]);
+                let (cool_all, warm_all) = (cool + detail.rain_mm[at_cool], warm + detail.rain_mm[at_warm]);
                 prop_assert!((cool_all - warm_all).abs() <= 1e-12 * cool_all.max(1.0));
             }
         }
