@@ -161,9 +161,17 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
         let month = month..month + width;
         let is_wet = precipitation_mm > 0.0;
 
-        let mean_from = if is_wet || block.detail.is_some() { 0 } else { with_snow };
+        let mean_from = if is_wet || block.detail.is_some() {
+            0
+        } else {
+            with_snow
+        };
         let offset = &lanes.mean_offset_c[month.clone()];
-        mean_row(&mut state.mean[mean_from..], weather.mean_c[day], &offset[mean_from..]);
+        mean_row(
+            &mut state.mean[mean_from..],
+            weather.mean_c[day],
+            &offset[mean_from..],
+        );
         let mut from = with_snow;
         if is_wet {
             let share = &lanes.precipitation_factor[month.clone()];
@@ -188,7 +196,12 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
         for table in [&mut *next_swe, &mut *net_melt, &mut *outflow] {
             table[..from].fill(0.0);
         }
-        let out = Out { swe: next_swe, net_melt, outflow, bare_ground_rain };
+        let out = Out {
+            swe: next_swe,
+            net_melt,
+            outflow,
+            bare_ground_rain,
+        };
         match (&mut block.detail, is_wet) {
             (Some(detail), _) => {
                 state.melt[..from].fill(0.0);
@@ -206,7 +219,11 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
         lanes.mix_row(swe, with_snow, mean_swe);
         lanes.mix_row(net_melt, from, mean_net_melt);
         lanes.mix_row(outflow, from, mean_outflow);
-        lanes.mix_row(bare_ground_rain, if is_wet { 0 } else { width }, mean_bare_ground_rain);
+        lanes.mix_row(
+            bare_ground_rain,
+            if is_wet { 0 } else { width },
+            mean_bare_ground_rain,
+        );
     }
     let end = weather.mean_c.len() * row_width;
     let (swe, mean_swe) = block.swe_mm[end..end + row_width].split_at_mut(width);
@@ -255,9 +272,25 @@ fn split(
     factor: &[f64],
     snow_fraction: impl Fn(f64, f64, f64) -> f64,
 ) {
-    let State { snow, rain, input, mean, .. } = state;
+    let State {
+        snow,
+        rain,
+        input,
+        mean,
+        ..
+    } = state;
     let (warm, per_c) = (&lanes.phase_warm_c, &lanes.phase_per_c);
-    split_row(snow, rain, input, mean, warm, per_c, factor, precipitation_mm, snow_fraction);
+    split_row(
+        snow,
+        rain,
+        input,
+        mean,
+        warm,
+        per_c,
+        factor,
+        precipitation_mm,
+        snow_fraction,
+    );
 }
 
 #[inline(always)]

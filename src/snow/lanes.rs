@@ -119,9 +119,9 @@ impl Lanes {
     /// A basin mean of a row of lanes: the shares' sum, taken in the order of the group.
     pub fn mix(&self, mix: usize, row: &[f64]) -> f64 {
         let shares = self.shares.chunks_exact(self.mix_width);
-        shares
-            .enumerate()
-            .fold(0.0, |sum, (place, shares)| sum + shares[mix] * row[self.column(mix, place)])
+        shares.enumerate().fold(0.0, |sum, (place, shares)| {
+            sum + shares[mix] * row[self.column(mix, place)]
+        })
     }
 
     /// All basin means of a row of lanes, in which the lanes before `from` are 0; the same sums as [`Self::mix`] takes,
