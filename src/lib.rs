@@ -9,6 +9,7 @@
 pub mod basin;
 pub mod calendar;
 pub mod cli;
+pub mod demo;
 pub mod ensemble;
 pub mod fault;
 pub mod findings;
