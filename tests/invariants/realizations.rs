@@ -10,7 +10,7 @@ use thawline::weather::{Series, YearSpan};
 /// A record whose every day says which day it is: the mean temperature is the day's number in the record and the
 /// precipitation one more than that. A year after a gap does not follow.
 fn labelled_record(follows: &[bool]) -> Series {
-    let start = WaterYearStart(MonthDay::new(10, 1).unwrap());
+    let start = WaterYearStart(MonthDay::new(10, 1).expect("a day of every year"));
     let mut series = Series::default();
     let mut water_year = 1990;
     for (number, follows) in follows.iter().enumerate() {

@@ -89,7 +89,7 @@ prop_compose! {
             degree_rule: if is_diurnal { DegreeRule::Diurnal } else { DegreeRule::Mean },
             degree_day_factor_lowest: lowest,
             degree_day_factor_highest: lowest + more,
-            highest_on: MonthDay::new(month, day).unwrap(),
+            highest_on: MonthDay::new(month, day).expect("a day of every year"),
             melt_base_c,
             liquid_holding_fraction,
             refreeze_fraction,
@@ -141,7 +141,7 @@ impl Climate {
     /// The day on which water years start in this hemisphere.
     pub fn start(&self) -> WaterYearStart {
         let month = if self.is_southern { 4 } else { 10 };
-        WaterYearStart(MonthDay::new(month, 1).unwrap())
+        WaterYearStart(MonthDay::new(month, 1).expect("a day of every year"))
     }
 
     /// Daily weather: a yearly wave with noise, and wet days of random amounts.
