@@ -9,9 +9,8 @@ use super::block::{Detail, YearBlock};
 use super::lanes::{Lanes, ROW_MULTIPLE};
 use super::ledger::{self, OpenLedger};
 use super::params::{DegreeRule, PhaseRule};
-use super::{
-    LaneConst, LaneDay, Pack, diurnal_degrees, linear_snow_fraction, mean_degrees, step, step_snow_fraction,
-};
+use super::passes::{diurnal_degrees_row, mean_degrees_row, mean_row, split_row, store_row};
+use super::{linear_snow_fraction, step_snow_fraction};
 use crate::weather::YearView;
 use multiversion::multiversion;
 
@@ -256,11 +255,10 @@ fn first_with_any(row: &[f64]) -> usize {
 /// Rain of the lanes before `from`, which have no snow and get none, falls on bare ground.
 #[inline(always)]
 fn bare_rain_row(state: &mut State, from: usize, bare_ground_rain: &mut [f64]) {
-    let (rain, year_bare) = (&state.rain[..from], &mut state.bare_ground_rain[..from]);
-    let bare_ground_rain = &mut bare_ground_rain[..from];
-    for lane in 0..from {
-        bare_ground_rain[lane] = rain[lane];
-        year_bare[lane] += rain[lane];
+    let rain = &state.rain[..from];
+    bare_ground_rain[..from].copy_from_slice(rain);
+    for (year_bare, rain) in state.bare_ground_rain.iter_mut().zip(rain) {
+        *year_bare += rain;
     }
 }
 
@@ -311,6 +309,12 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool>(
     degree_day_factor: &[f64],
     out: Out<'_>,
 ) {
+    let Out {
+        swe,
+        net_melt,
+        outflow,
+        bare_ground_rain,
+    } = out;
     store_row::<IS_WET, WITH_DETAIL>(
         &mut state.ice[from..],
         &mut state.liquid[from..],
@@ -318,10 +322,10 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool>(
         &mut state.refreeze[from..],
         &mut state.outflow[from..],
         &mut state.bare_ground_rain[from..],
-        &mut out.swe[from..],
-        &mut out.net_melt[from..],
-        &mut out.outflow[from..],
-        &mut out.bare_ground_rain[from..],
+        &mut swe[from..],
+        &mut net_melt[from..],
+        &mut outflow[from..],
+        &mut bare_ground_rain[from..],
         &state.snow[from..],
         &state.rain[from..],
         &state.mean[from..],
@@ -331,130 +335,6 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool>(
         &lanes.holding_fraction[from..],
         &lanes.refreeze_fraction[from..],
     );
-}
-
-// The row passes. Every row is a parameter of its own: so the compiler knows that no two of them overlap, and makes
-// vector code without asking at run time.
-
-#[inline(always)]
-fn mean_row(mean: &mut [f64], station_c: f64, offset_c: &[f64]) {
-    for (mean, offset) in mean.iter_mut().zip(offset_c) {
-        *mean = station_c + offset;
-    }
-}
-
-#[inline(always)]
-fn mean_degrees_row(above: &mut [f64], below: &mut [f64], mean: &[f64], base: &[f64]) {
-    let n = above.len();
-    let (below, mean, base) = (&mut below[..n], &mean[..n], &base[..n]);
-    for lane in 0..n {
-        (above[lane], below[lane]) = mean_degrees(mean[lane], base[lane]);
-    }
-}
-
-#[inline(always)]
-fn diurnal_degrees_row(
-    above: &mut [f64],
-    below: &mut [f64],
-    mean: &[f64],
-    base: &[f64],
-    offset_c: &[f64],
-    half_range_c: f64,
-) {
-    let n = above.len();
-    let (below, mean, base, offset) = (&mut below[..n], &mean[..n], &base[..n], &offset_c[..n]);
-    for lane in 0..n {
-        (above[lane], below[lane]) = diurnal_degrees(mean[lane], half_range_c + offset[lane], base[lane]);
-    }
-}
-
-#[inline(always)]
-#[expect(clippy::too_many_arguments, reason = "a row a parameter, see above")]
-fn split_row(
-    snow: &mut [f64],
-    rain: &mut [f64],
-    input: &mut [f64],
-    mean: &[f64],
-    warm: &[f64],
-    per_c: &[f64],
-    factor: &[f64],
-    precipitation_mm: f64,
-    snow_fraction: impl Fn(f64, f64, f64) -> f64,
-) {
-    let n = snow.len();
-    let (rain, input, mean) = (&mut rain[..n], &mut input[..n], &mean[..n]);
-    let (warm, per_c, factor) = (&warm[..n], &per_c[..n], &factor[..n]);
-    for lane in 0..n {
-        let fallen = precipitation_mm * factor[lane];
-        let frozen = snow_fraction(mean[lane], warm[lane], per_c[lane]) * fallen;
-        snow[lane] = frozen;
-        rain[lane] = fallen - frozen;
-        input[lane] += fallen;
-    }
-}
-
-#[inline(always)]
-#[expect(clippy::too_many_arguments, reason = "a row a parameter, see above")]
-fn store_row<const IS_WET: bool, const WITH_DETAIL: bool>(
-    ice: &mut [f64],
-    liquid: &mut [f64],
-    melt: &mut [f64],
-    refreeze: &mut [f64],
-    year_outflow: &mut [f64],
-    year_bare: &mut [f64],
-    swe: &mut [f64],
-    net_melt: &mut [f64],
-    outflow: &mut [f64],
-    bare_ground_rain: &mut [f64],
-    snow: &[f64],
-    rain: &[f64],
-    mean: &[f64],
-    above: &[f64],
-    below: &[f64],
-    factor: &[f64],
-    holding: &[f64],
-    refreezing: &[f64],
-) {
-    let n = ice.len();
-    let (liquid, melt, refreeze) = (&mut liquid[..n], &mut melt[..n], &mut refreeze[..n]);
-    let (year_outflow, year_bare) = (&mut year_outflow[..n], &mut year_bare[..n]);
-    let (swe, net_melt) = (&mut swe[..n], &mut net_melt[..n]);
-    let (outflow, bare_ground_rain) = (&mut outflow[..n], &mut bare_ground_rain[..n]);
-    let (snow, rain, mean, above, below) = (&snow[..n], &rain[..n], &mean[..n], &above[..n], &below[..n]);
-    let (factor, holding, refreezing) = (&factor[..n], &holding[..n], &refreezing[..n]);
-    for lane in 0..n {
-        let pack = Pack {
-            ice_mm: ice[lane],
-            liquid_mm: liquid[lane],
-        };
-        let day = LaneDay {
-            snow_mm: if IS_WET { snow[lane] } else { 0.0 },
-            rain_mm: if IS_WET { rain[lane] } else { 0.0 },
-            mean_c: mean[lane],
-            melt_degrees_c: above[lane],
-            freeze_degrees_c: below[lane],
-            degree_day_factor: factor[lane],
-        };
-        let lane_const = LaneConst {
-            holding_fraction: holding[lane],
-            refreeze_fraction: refreezing[lane],
-        };
-        let (pack, fluxes) = step(pack, day, lane_const);
-        ice[lane] = pack.ice_mm;
-        liquid[lane] = pack.liquid_mm;
-        swe[lane] = pack.ice_mm + pack.liquid_mm;
-        net_melt[lane] = fluxes.melt_mm - fluxes.refreeze_mm;
-        outflow[lane] = fluxes.outflow_mm;
-        year_outflow[lane] += fluxes.outflow_mm;
-        if IS_WET {
-            bare_ground_rain[lane] = fluxes.bare_ground_rain_mm;
-            year_bare[lane] += fluxes.bare_ground_rain_mm;
-        }
-        if WITH_DETAIL {
-            melt[lane] = fluxes.melt_mm;
-            refreeze[lane] = fluxes.refreeze_mm;
-        }
-    }
 }
 
 impl Detail {

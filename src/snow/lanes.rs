@@ -36,8 +36,9 @@ pub struct Lanes {
     pub(super) width: usize,
     pub(super) mixes: usize,
     pub(super) mix_width: usize,
-    /// `[place][mix]`, mixes padded: share of the lane at a place of a group in the group's basin mean.
-    pub(super) shares: Vec<f64>,
+    places: usize,
+    /// `[vector of mixes][place]`: share of the lane at a place of a group in the group's basin mean.
+    shares: Vec<[f64; ROW_MULTIPLE]>,
     pub(super) phase: PhaseRule,
     pub(super) degrees: DegreeRule,
     /// `[month][lane]`: added to the station's daily mean, degC.
@@ -74,7 +75,8 @@ impl Lanes {
             width,
             mixes,
             mix_width,
-            shares: vec![0.0; places * mix_width],
+            places,
+            shares: vec![[0.0; ROW_MULTIPLE]; places * mix_width / ROW_MULTIPLE],
             phase: first.map_or(PhaseRule::LINEAR, |spec| spec.snow.rain_snow),
             degrees: first.map_or(DegreeRule::Diurnal, |spec| spec.snow.degree_rule),
             mean_offset_c: vec![0.0; 12 * width],
@@ -90,7 +92,7 @@ impl Lanes {
         for (mix, group) in groups.iter().enumerate() {
             for (place, spec) in group.iter().enumerate() {
                 lanes.set(lanes.column(mix, place), spec);
-                lanes.shares[place * mix_width + mix] = spec.share;
+                lanes.shares[mix / ROW_MULTIPLE * places + place][mix % ROW_MULTIPLE] = spec.share;
             }
         }
         lanes
@@ -118,28 +120,30 @@ impl Lanes {
 
     /// A basin mean of a row of lanes: the shares' sum, taken in the order of the group.
     pub fn mix(&self, mix: usize, row: &[f64]) -> f64 {
-        let shares = self.shares.chunks_exact(self.mix_width);
-        shares.enumerate().fold(0.0, |sum, (place, shares)| {
-            sum + shares[mix] * row[self.column(mix, place)]
-        })
+        let shares = &self.shares[mix / ROW_MULTIPLE * self.places..][..self.places];
+        let mut sum = 0.0;
+        for (place, shares) in shares.iter().enumerate() {
+            sum += shares[mix % ROW_MULTIPLE] * row[self.column(mix, place)];
+        }
+        sum
     }
 
     /// All basin means of a row of lanes, in which the lanes before `from` are 0; the same sums as [`Self::mix`] takes,
     /// side by side.
     #[inline(always)]
     pub(super) fn mix_row(&self, row: &[f64], from: usize, means: &mut [f64]) {
-        let first_place = from / self.mixes;
-        for (group, means) in means.chunks_exact_mut(ROW_MULTIPLE).enumerate() {
-            let at = group * ROW_MULTIPLE;
+        let first_place = from.checked_div(self.mixes).unwrap_or(0);
+        let (means, _) = means.as_chunks_mut::<ROW_MULTIPLE>();
+        for (vector, means) in means.iter_mut().enumerate() {
+            let shares = &self.shares[vector * self.places..][..self.places];
             let mut sums = [0.0; ROW_MULTIPLE];
-            let shares = self.shares[at..].chunks(self.mix_width);
-            for (place, shares) in shares.enumerate().skip(first_place) {
-                let lanes = &row[place * self.mixes + at..][..ROW_MULTIPLE];
-                for ((sum, share), value) in sums.iter_mut().zip(shares).zip(lanes) {
-                    *sum += share * value;
+            for (place, shares) in shares.iter().enumerate().skip(first_place) {
+                let lanes = &row[place * self.mixes + vector * ROW_MULTIPLE..][..ROW_MULTIPLE];
+                for mix in 0..ROW_MULTIPLE {
+                    sums[mix] += shares[mix] * lanes[mix];
                 }
             }
-            means.copy_from_slice(&sums);
+            *means = sums;
         }
     }
 
