@@ -42,11 +42,11 @@ impl<'p> Workshop<'p> {
         self.plan.generator.fill(number, &mut self.weather);
         self.engine.restart();
         let bands = self.plan.bands;
-        let reference_columns = self.plan.reference * bands..(self.plan.reference + 1) * bands;
+        let (lanes, reference) = (self.plan.lanes, self.plan.reference);
         for (year, span) in self.weather.years.iter().enumerate() {
             let view = self.weather.view(span);
             let mut block = self.engine.year(view)?;
-            if year == 0 && reference_columns.clone().any(|column| keeps_snow(block, column)) {
+            if year == 0 && (0..bands).any(|band| keeps_snow(block, lanes.column(reference, band))) {
                 block = self.engine.year(view)?;
             }
             self.columns = block.width;
@@ -80,7 +80,7 @@ impl<'p> Workshop<'p> {
             for band in 0..bands {
                 for (number, measure) in measures.iter().enumerate() {
                     one.clear();
-                    one.extend(column(number, level * bands + band));
+                    one.extend(column(number, self.plan.lanes.column(level, band)));
                     let count = |what: f64| one.iter().filter(|value| **value == what).count() as u32;
                     kept.band_undefined.push([count(NONE), count(NOT_GONE)]);
                     kept.band_periods.push(period_value(measure.kind, &mut one));

@@ -2,15 +2,15 @@
 //!
 //! A day is a few passes over rows that stay in the first-level cache: temperature and degrees, the split into rain and
 //! snow on wet days, the store. The rules are chosen once a row; the equations themselves are the scalar functions of
-//! this room, and the compiler turns the row loops into vector code. A dry day on bare ground is skipped.
+//! this room, and the compiler turns the row loops into vector code. The lanes at the front of a row that are bare and
+//! stay bare are skipped: melt and outflow are 0 there, and all rain falls on bare ground.
 
 use super::block::{Detail, YearBlock};
 use super::lanes::{Lanes, ROW_MULTIPLE};
 use super::ledger::{self, OpenLedger};
 use super::params::{DegreeRule, PhaseRule};
-use super::{
-    LaneConst, LaneDay, Pack, diurnal_degrees, linear_snow_fraction, mean_degrees, step, step_snow_fraction,
-};
+use super::passes::{diurnal_degrees_row, mean_degrees_row, mean_row, split_row, store_row};
+use super::{linear_snow_fraction, step_snow_fraction};
 use crate::weather::YearView;
 use multiversion::multiversion;
 
@@ -76,12 +76,11 @@ impl<'l> Engine<'l> {
             outflow: row(),
             bare_ground_rain: row(),
         };
-        let mix_width = lanes.mixes().next_multiple_of(ROW_MULTIPLE);
         Self {
             lanes,
             path,
             state,
-            block: YearBlock::new(lanes.width, mix_width, with_detail),
+            block: YearBlock::new(lanes.width, lanes.mix_width, with_detail),
         }
     }
 
@@ -148,195 +147,199 @@ fn run_avx2(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mu
 #[inline(always)]
 fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut YearBlock) {
     let (width, row_width) = (lanes.width, block.width);
+    begin_swe(state, &mut block.swe_mm[..width]);
     for (day, precipitation_mm) in weather.precipitation_mm.iter().copied().enumerate() {
-        let row = day * row_width..day * row_width + width;
-        let has_snow = swe_row(state, &mut block.swe_mm[row.clone()]);
+        let row = day * row_width..(day + 1) * row_width;
+        let (before, after) = block.swe_mm.split_at_mut(row.end);
+        let (swe, mean_swe) = before[row.start..].split_at_mut(width);
+        let (net_melt, mean_net_melt) = block.net_melt_mm[row.clone()].split_at_mut(width);
+        let (outflow, mean_outflow) = block.outflow_mm[row.clone()].split_at_mut(width);
+        let (bare_ground_rain, mean_bare_ground_rain) = block.bare_ground_rain_mm[row].split_at_mut(width);
+        let with_snow = first_with_any(swe);
         let month = usize::from(weather.month[day]) * width;
         let month = month..month + width;
         let is_wet = precipitation_mm > 0.0;
-        let net_melt = &mut block.net_melt_mm[row.clone()];
-        let outflow = &mut block.outflow_mm[row.clone()];
-        let bare_ground_rain = &mut block.bare_ground_rain_mm[row];
-        if has_snow || is_wet || block.detail.is_some() {
-            mean_row(state, weather.mean_c[day], &lanes.mean_offset_c[month.clone()]);
-        }
-        if has_snow || is_wet {
-            match lanes.degrees {
-                DegreeRule::Mean => mean_degrees_row(state, lanes),
-                DegreeRule::Diurnal => diurnal_degrees_row(
-                    state,
-                    lanes,
-                    weather.half_range_c[day],
-                    &lanes.half_range_offset_c[month.clone()],
-                ),
-            }
-            let factor = (usize::from(weather.day_of_year[day]) - 1) * width;
-            let factor = &lanes.degree_day_factor[factor..factor + width];
-            if is_wet {
-                let share = &lanes.precipitation_factor[month];
-                match lanes.phase {
-                    PhaseRule::Linear { .. } => {
-                        split_row(state, lanes, precipitation_mm, share, linear_snow_fraction)
-                    }
-                    PhaseRule::Step { .. } => {
-                        split_row(state, lanes, precipitation_mm, share, |mean, warm, _| {
-                            step_snow_fraction(mean, warm)
-                        });
-                    }
-                }
-                store_row::<true>(state, lanes, factor, net_melt, outflow, bare_ground_rain);
-            } else {
-                store_row::<false>(state, lanes, factor, net_melt, outflow, bare_ground_rain);
-            }
+
+        let mean_from = if is_wet || block.detail.is_some() {
+            0
         } else {
-            net_melt.fill(0.0);
-            outflow.fill(0.0);
+            with_snow
+        };
+        let offset = &lanes.mean_offset_c[month.clone()];
+        mean_row(
+            &mut state.mean[mean_from..],
+            weather.mean_c[day],
+            &offset[mean_from..],
+        );
+        let mut from = with_snow;
+        if is_wet {
+            let share = &lanes.precipitation_factor[month.clone()];
+            match lanes.phase {
+                PhaseRule::Linear { .. } => {
+                    split(state, lanes, precipitation_mm, share, linear_snow_fraction);
+                }
+                PhaseRule::Step { .. } => split(state, lanes, precipitation_mm, share, |mean, warm, _| {
+                    step_snow_fraction(mean, warm)
+                }),
+            }
+            from = first_with_any(&state.snow[..with_snow]);
+            bare_rain_row(state, from, bare_ground_rain);
+        } else {
             bare_ground_rain.fill(0.0);
         }
-        if let Some(detail) = &mut block.detail {
-            detail.keep(day, state, has_snow || is_wet, is_wet);
+        let half_range_offset = &lanes.half_range_offset_c[month];
+        degrees_row(state, lanes, from, weather.half_range_c[day], half_range_offset);
+        let factor = (usize::from(weather.day_of_year[day]) - 1) * width;
+        let factor = &lanes.degree_day_factor[factor..factor + width];
+        let next_swe = &mut after[..width];
+        for table in [&mut *next_swe, &mut *net_melt, &mut *outflow] {
+            table[..from].fill(0.0);
         }
-        mix_rows(lanes, block, day, has_snow || is_wet);
+        let out = Out {
+            swe: next_swe,
+            net_melt,
+            outflow,
+            bare_ground_rain,
+        };
+        match (&mut block.detail, is_wet) {
+            (Some(detail), _) => {
+                state.melt[..from].fill(0.0);
+                state.refreeze[..from].fill(0.0);
+                if is_wet {
+                    store::<true, true>(state, lanes, from, factor, out);
+                } else {
+                    store::<false, true>(state, lanes, from, factor, out);
+                }
+                detail.keep(day, state, is_wet);
+            }
+            (None, true) => store::<true, false>(state, lanes, from, factor, out),
+            (None, false) => store::<false, false>(state, lanes, from, factor, out),
+        }
+        lanes.mix_row(swe, with_snow, mean_swe);
+        lanes.mix_row(net_melt, from, mean_net_melt);
+        lanes.mix_row(outflow, from, mean_outflow);
+        lanes.mix_row(
+            bare_ground_rain,
+            if is_wet { 0 } else { width },
+            mean_bare_ground_rain,
+        );
     }
     let end = weather.mean_c.len() * row_width;
-    swe_row(state, &mut block.swe_mm[end..end + width]);
-    let (lane_part, mix_part) = block.swe_mm[end..end + row_width].split_at_mut(width);
-    for (mix, mean) in lanes.mixes.iter().zip(mix_part) {
-        *mean = mix.of(lane_part);
+    let (swe, mean_swe) = block.swe_mm[end..end + row_width].split_at_mut(width);
+    lanes.mix_row(swe, 0, mean_swe);
+}
+
+/// Where the store puts a day: SWE as the next day begins, and the day's fluxes.
+struct Out<'b> {
+    swe: &'b mut [f64],
+    net_melt: &'b mut [f64],
+    outflow: &'b mut [f64],
+    bare_ground_rain: &'b mut [f64],
+}
+
+/// SWE of every lane as the year begins.
+fn begin_swe(state: &State, swe: &mut [f64]) {
+    for ((swe, ice), liquid) in swe.iter_mut().zip(&state.ice).zip(&state.liquid) {
+        *swe = ice + liquid;
     }
 }
 
-/// SWE of every lane as the day begins; tells whether there is any.
+/// The first lane, in whole vectors, of those that are not all 0; the row's length if all are.
 #[inline(always)]
-fn swe_row(state: &State, swe: &mut [f64]) -> bool {
-    let n = swe.len();
-    let (ice, liquid) = (&state.ice[..n], &state.liquid[..n]);
-    let mut any_bits = 0;
-    for lane in 0..n {
-        let value = ice[lane] + liquid[lane];
-        any_bits |= value.to_bits();
-        swe[lane] = value;
-    }
-    any_bits != 0
+fn first_with_any(row: &[f64]) -> usize {
+    let is_any = |lanes: &[f64]| lanes.iter().fold(0, |bits, value| bits | value.to_bits()) != 0;
+    let vectors = row.chunks_exact(ROW_MULTIPLE);
+    vectors.take_while(|lanes| !is_any(lanes)).count() * ROW_MULTIPLE
 }
 
+/// Rain of the lanes before `from`, which have no snow and get none, falls on bare ground.
 #[inline(always)]
-fn mean_row(state: &mut State, station_c: f64, offset_c: &[f64]) {
-    for (mean, offset) in state.mean.iter_mut().zip(offset_c) {
-        *mean = station_c + offset;
-    }
-}
-
-#[inline(always)]
-fn mean_degrees_row(state: &mut State, lanes: &Lanes) {
-    let n = lanes.width;
-    let (mean, base) = (&state.mean[..n], &lanes.melt_base_c[..n]);
-    let (above, below) = (&mut state.melt_degrees[..n], &mut state.freeze_degrees[..n]);
-    for lane in 0..n {
-        (above[lane], below[lane]) = mean_degrees(mean[lane], base[lane]);
-    }
-}
-
-#[inline(always)]
-fn diurnal_degrees_row(state: &mut State, lanes: &Lanes, half_range_c: f64, offset_c: &[f64]) {
-    let n = lanes.width;
-    let (mean, base, offset) = (&state.mean[..n], &lanes.melt_base_c[..n], &offset_c[..n]);
-    let (above, below) = (&mut state.melt_degrees[..n], &mut state.freeze_degrees[..n]);
-    for lane in 0..n {
-        (above[lane], below[lane]) = diurnal_degrees(mean[lane], half_range_c + offset[lane], base[lane]);
+fn bare_rain_row(state: &mut State, from: usize, bare_ground_rain: &mut [f64]) {
+    let rain = &state.rain[..from];
+    bare_ground_rain[..from].copy_from_slice(rain);
+    for (year_bare, rain) in state.bare_ground_rain.iter_mut().zip(rain) {
+        *year_bare += rain;
     }
 }
 
 #[inline(always)]
-fn split_row(
+fn split(
     state: &mut State,
     lanes: &Lanes,
     precipitation_mm: f64,
     factor: &[f64],
     snow_fraction: impl Fn(f64, f64, f64) -> f64,
 ) {
-    let n = lanes.width;
-    let (mean, factor) = (&state.mean[..n], &factor[..n]);
-    let (warm, per_c) = (&lanes.phase_warm_c[..n], &lanes.phase_per_c[..n]);
-    let (snow, rain, input) = (&mut state.snow[..n], &mut state.rain[..n], &mut state.input[..n]);
-    for lane in 0..n {
-        let fallen = precipitation_mm * factor[lane];
-        let frozen = snow_fraction(mean[lane], warm[lane], per_c[lane]) * fallen;
-        snow[lane] = frozen;
-        rain[lane] = fallen - frozen;
-        input[lane] += fallen;
+    let State {
+        snow,
+        rain,
+        input,
+        mean,
+        ..
+    } = state;
+    let (warm, per_c) = (&lanes.phase_warm_c, &lanes.phase_per_c);
+    split_row(
+        snow,
+        rain,
+        input,
+        mean,
+        warm,
+        per_c,
+        factor,
+        precipitation_mm,
+        snow_fraction,
+    );
+}
+
+#[inline(always)]
+fn degrees_row(state: &mut State, lanes: &Lanes, from: usize, half_range_c: f64, offset_c: &[f64]) {
+    let (above, below) = (&mut state.melt_degrees[from..], &mut state.freeze_degrees[from..]);
+    let (mean, base) = (&state.mean[from..], &lanes.melt_base_c[from..]);
+    match lanes.degrees {
+        DegreeRule::Mean => mean_degrees_row(above, below, mean, base),
+        DegreeRule::Diurnal => diurnal_degrees_row(above, below, mean, base, &offset_c[from..], half_range_c),
     }
 }
 
 #[inline(always)]
-fn store_row<const IS_WET: bool>(
+fn store<const IS_WET: bool, const WITH_DETAIL: bool>(
     state: &mut State,
     lanes: &Lanes,
+    from: usize,
     degree_day_factor: &[f64],
-    net_melt: &mut [f64],
-    outflow: &mut [f64],
-    bare_ground_rain: &mut [f64],
+    out: Out<'_>,
 ) {
-    let n = lanes.width;
-    let (ice, liquid) = (&mut state.ice[..n], &mut state.liquid[..n]);
-    let (snow, rain, mean) = (&state.snow[..n], &state.rain[..n], &state.mean[..n]);
-    let (above, below) = (&state.melt_degrees[..n], &state.freeze_degrees[..n]);
-    let (holding, refreezing) = (&lanes.holding_fraction[..n], &lanes.refreeze_fraction[..n]);
-    let (melt, refreeze) = (&mut state.melt[..n], &mut state.refreeze[..n]);
-    let (year_outflow, year_bare) = (&mut state.outflow[..n], &mut state.bare_ground_rain[..n]);
-    let factor = &degree_day_factor[..n];
-    let (net_melt, outflow, bare_ground_rain) =
-        (&mut net_melt[..n], &mut outflow[..n], &mut bare_ground_rain[..n]);
-    for lane in 0..n {
-        let pack = Pack {
-            ice_mm: ice[lane],
-            liquid_mm: liquid[lane],
-        };
-        let day = LaneDay {
-            snow_mm: if IS_WET { snow[lane] } else { 0.0 },
-            rain_mm: if IS_WET { rain[lane] } else { 0.0 },
-            mean_c: mean[lane],
-            melt_degrees_c: above[lane],
-            freeze_degrees_c: below[lane],
-            degree_day_factor: factor[lane],
-        };
-        let lane_const = LaneConst {
-            holding_fraction: holding[lane],
-            refreeze_fraction: refreezing[lane],
-        };
-        let (pack, fluxes) = step(pack, day, lane_const);
-        ice[lane] = pack.ice_mm;
-        liquid[lane] = pack.liquid_mm;
-        melt[lane] = fluxes.melt_mm;
-        refreeze[lane] = fluxes.refreeze_mm;
-        net_melt[lane] = fluxes.melt_mm - fluxes.refreeze_mm;
-        outflow[lane] = fluxes.outflow_mm;
-        bare_ground_rain[lane] = fluxes.bare_ground_rain_mm;
-        year_outflow[lane] += fluxes.outflow_mm;
-        year_bare[lane] += fluxes.bare_ground_rain_mm;
-    }
-}
-
-/// Basin means of the day's rows.
-#[inline(always)]
-fn mix_rows(lanes: &Lanes, block: &mut YearBlock, day: usize, has_water: bool) {
-    let row = day * block.width..(day + 1) * block.width;
-    for table in [
-        &mut block.swe_mm,
-        &mut block.net_melt_mm,
-        &mut block.outflow_mm,
-        &mut block.bare_ground_rain_mm,
-    ] {
-        let (lane_part, mix_part) = table[row.clone()].split_at_mut(lanes.width);
-        for (mix, mean) in lanes.mixes.iter().zip(mix_part) {
-            *mean = if has_water { mix.of(lane_part) } else { 0.0 };
-        }
-    }
+    let Out {
+        swe,
+        net_melt,
+        outflow,
+        bare_ground_rain,
+    } = out;
+    store_row::<IS_WET, WITH_DETAIL>(
+        &mut state.ice[from..],
+        &mut state.liquid[from..],
+        &mut state.melt[from..],
+        &mut state.refreeze[from..],
+        &mut state.outflow[from..],
+        &mut state.bare_ground_rain[from..],
+        &mut swe[from..],
+        &mut net_melt[from..],
+        &mut outflow[from..],
+        &mut bare_ground_rain[from..],
+        &state.snow[from..],
+        &state.rain[from..],
+        &state.mean[from..],
+        &state.melt_degrees[from..],
+        &state.freeze_degrees[from..],
+        &degree_day_factor[from..],
+        &lanes.holding_fraction[from..],
+        &lanes.refreeze_fraction[from..],
+    );
 }
 
 impl Detail {
-    /// Copies the day's rows; a day that was skipped has zeros, and a dry one no rain and snow.
-    fn keep(&mut self, day: usize, state: &State, has_water: bool, is_wet: bool) {
+    /// Copies the day's rows; a dry day has no rain and snow.
+    fn keep(&mut self, day: usize, state: &State, is_wet: bool) {
         let row = day * self.width..(day + 1) * self.width;
         let keep = |into: &mut Vec<f64>, from: &[f64], is_valid: bool| {
             if is_valid {
@@ -348,8 +351,8 @@ impl Detail {
         keep(&mut self.mean_c, &state.mean, true);
         keep(&mut self.rain_mm, &state.rain, is_wet);
         keep(&mut self.snow_mm, &state.snow, is_wet);
-        keep(&mut self.melt_mm, &state.melt, has_water);
-        keep(&mut self.refreeze_mm, &state.refreeze, has_water);
+        keep(&mut self.melt_mm, &state.melt, true);
+        keep(&mut self.refreeze_mm, &state.refreeze, true);
         keep(&mut self.ice_mm, &state.ice, true);
         keep(&mut self.liquid_mm, &state.liquid, true);
     }

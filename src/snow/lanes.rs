@@ -25,19 +25,20 @@ pub struct LaneSpec<'a> {
     pub share: f64,
 }
 
-/// A basin mean: consecutive lanes with their shares.
-#[derive(Debug, Clone, PartialEq)]
-pub(super) struct Mix {
-    pub first: usize,
-    pub shares: Vec<f64>,
-}
-
-/// Columns of numbers for the engine, one a lane, and the mixes of lanes that are basin means.
+/// Columns of numbers for the engine, one a lane, and the shares with which they mix to basin means.
+///
+/// Lanes stand by their place in the group first and by group second: the lowest band at every level, then the next
+/// band at every level. So bare lanes stand together at the front of a row, where the engine skips them, and the basin
+/// means of all groups are summed side by side.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Lanes {
     count: usize,
     pub(super) width: usize,
-    pub(super) mixes: Vec<Mix>,
+    pub(super) mixes: usize,
+    pub(super) mix_width: usize,
+    places: usize,
+    /// `[vector of mixes][place]`: share of the lane at a place of a group in the group's basin mean.
+    shares: Vec<[f64; ROW_MULTIPLE]>,
     pub(super) phase: PhaseRule,
     pub(super) degrees: DegreeRule,
     /// `[month][lane]`: added to the station's daily mean, degC.
@@ -61,20 +62,23 @@ pub struct Lanes {
 impl Lanes {
     /// Makes the columns. Each group of specs is one basin at one level and gives one basin mean; its shares should
     /// add up to 1. All specs take the kind of rain/snow rule and the degree rule of the first; their numbers are their
-    /// own.
+    /// own. A group that is shorter than the longest is filled up with lanes on which nothing falls.
     pub fn new(groups: &[Vec<LaneSpec<'_>>]) -> Self {
-        let specs: Vec<&LaneSpec<'_>> = groups.iter().flatten().collect();
-        let width = specs.len().next_multiple_of(ROW_MULTIPLE);
+        let first = groups.iter().flatten().next();
+        let mixes = groups.len();
+        let places = groups.iter().map(Vec::len).max().unwrap_or(0);
+        let mix_width = mixes.next_multiple_of(ROW_MULTIPLE);
+        // The lanes of the last place, too, are read as a padded row of mixes.
+        let width = (mixes * places.saturating_sub(1) + mix_width).next_multiple_of(ROW_MULTIPLE);
         let mut lanes = Self {
-            count: specs.len(),
+            count: mixes * places,
             width,
-            mixes: Vec::with_capacity(groups.len()),
-            phase: specs
-                .first()
-                .map_or(PhaseRule::LINEAR, |spec| spec.snow.rain_snow),
-            degrees: specs
-                .first()
-                .map_or(DegreeRule::Diurnal, |spec| spec.snow.degree_rule),
+            mixes,
+            mix_width,
+            places,
+            shares: vec![[0.0; ROW_MULTIPLE]; places * mix_width / ROW_MULTIPLE],
+            phase: first.map_or(PhaseRule::LINEAR, |spec| spec.snow.rain_snow),
+            degrees: first.map_or(DegreeRule::Diurnal, |spec| spec.snow.degree_rule),
             mean_offset_c: vec![0.0; 12 * width],
             half_range_offset_c: vec![0.0; 12 * width],
             precipitation_factor: vec![0.0; 12 * width],
@@ -85,18 +89,18 @@ impl Lanes {
             holding_fraction: vec![0.0; width],
             refreeze_fraction: vec![0.0; width],
         };
-        let mut first = 0;
-        for group in groups {
-            lanes.mixes.push(Mix {
-                first,
-                shares: group.iter().map(|spec| spec.share).collect(),
-            });
-            first += group.len();
-        }
-        for (lane, spec) in specs.into_iter().enumerate() {
-            lanes.set(lane, spec);
+        for (mix, group) in groups.iter().enumerate() {
+            for (place, spec) in group.iter().enumerate() {
+                lanes.set(lanes.column(mix, place), spec);
+                lanes.shares[mix / ROW_MULTIPLE * places + place][mix % ROW_MULTIPLE] = spec.share;
+            }
         }
         lanes
+    }
+
+    /// Column of the lane at a place of a group, both counted from 0 in the order in which they were given.
+    pub fn column(&self, group: usize, place: usize) -> usize {
+        place * self.mixes + group
     }
 
     /// Number of lanes, without the padding.
@@ -106,7 +110,7 @@ impl Lanes {
 
     /// Number of basin means.
     pub fn mixes(&self) -> usize {
-        self.mixes.len()
+        self.mixes
     }
 
     /// Column of the first basin mean in a year block; the others follow in the order of their groups.
@@ -114,9 +118,33 @@ impl Lanes {
         self.width
     }
 
-    /// A basin mean of a row of lanes: the shares' sum, taken in the order of the lanes.
+    /// A basin mean of a row of lanes: the shares' sum, taken in the order of the group.
     pub fn mix(&self, mix: usize, row: &[f64]) -> f64 {
-        self.mixes[mix].of(row)
+        let shares = &self.shares[mix / ROW_MULTIPLE * self.places..][..self.places];
+        let mut sum = 0.0;
+        for (place, shares) in shares.iter().enumerate() {
+            sum += shares[mix % ROW_MULTIPLE] * row[self.column(mix, place)];
+        }
+        sum
+    }
+
+    /// All basin means of a row of lanes, in which the lanes before `from` are 0; the same sums as [`Self::mix`] takes,
+    /// side by side.
+    #[inline(always)]
+    pub(super) fn mix_row(&self, row: &[f64], from: usize, means: &mut [f64]) {
+        let first_place = from.checked_div(self.mixes).unwrap_or(0);
+        let (means, _) = means.as_chunks_mut::<ROW_MULTIPLE>();
+        for (vector, means) in means.iter_mut().enumerate() {
+            let shares = &self.shares[vector * self.places..][..self.places];
+            let mut sums = [0.0; ROW_MULTIPLE];
+            for (place, shares) in shares.iter().enumerate().skip(first_place) {
+                let lanes = &row[place * self.mixes + vector * ROW_MULTIPLE..][..ROW_MULTIPLE];
+                for mix in 0..ROW_MULTIPLE {
+                    sums[mix] += shares[mix] * lanes[mix];
+                }
+            }
+            *means = sums;
+        }
     }
 
     fn set(&mut self, lane: usize, spec: &LaneSpec<'_>) {
@@ -145,16 +173,5 @@ impl Lanes {
         };
         self.holding_fraction[lane] = spec.snow.liquid_holding_fraction;
         self.refreeze_fraction[lane] = spec.snow.refreeze_fraction;
-    }
-}
-
-impl Mix {
-    #[inline(always)]
-    pub fn of(&self, row: &[f64]) -> f64 {
-        let mut sum = 0.0;
-        for (value, share) in row[self.first..].iter().zip(&self.shares) {
-            sum += share * value;
-        }
-        sum
     }
 }

@@ -12,6 +12,7 @@ mod lanes;
 mod ledger;
 mod melt;
 mod params;
+mod passes;
 mod phase;
 mod step;
 

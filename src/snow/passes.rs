@@ -1,0 +1,138 @@
+//! Passes over rows of lanes: temperature, degrees, rain and snow, the store.
+//!
+//! Every row is a parameter of its own: so the compiler knows that no two of them overlap, and makes vector code without
+//! asking at run time. The equations are the scalar functions of this room.
+
+use super::{LaneConst, LaneDay, Pack, diurnal_degrees, mean_degrees, step};
+
+/// Station temperature carried to every lane.
+#[inline(always)]
+pub(super) fn mean_row(mean: &mut [f64], station_c: f64, offset_c: &[f64]) {
+    for (mean, offset) in mean.iter_mut().zip(offset_c) {
+        *mean = station_c + offset;
+    }
+}
+
+/// Degrees of the daily mean.
+#[inline(always)]
+pub(super) fn mean_degrees_row(above: &mut [f64], below: &mut [f64], mean: &[f64], base: &[f64]) {
+    let n = above.len();
+    let (below, mean, base) = (&mut below[..n], &mean[..n], &base[..n]);
+    for lane in 0..n {
+        (above[lane], below[lane]) = mean_degrees(mean[lane], base[lane]);
+    }
+}
+
+/// Degrees of a sine between minimum and maximum.
+#[inline(always)]
+pub(super) fn diurnal_degrees_row(
+    above: &mut [f64],
+    below: &mut [f64],
+    mean: &[f64],
+    base: &[f64],
+    offset_c: &[f64],
+    half_range_c: f64,
+) {
+    let n = above.len();
+    let (below, mean, base, offset) = (&mut below[..n], &mean[..n], &base[..n], &offset_c[..n]);
+    for lane in 0..n {
+        (above[lane], below[lane]) = diurnal_degrees(mean[lane], half_range_c + offset[lane], base[lane]);
+    }
+}
+
+/// Rain and snow of every lane, and its part of the ledger.
+#[inline(always)]
+#[expect(
+    clippy::too_many_arguments,
+    reason = "a row a parameter, see the top of this file"
+)]
+pub(super) fn split_row(
+    snow: &mut [f64],
+    rain: &mut [f64],
+    input: &mut [f64],
+    mean: &[f64],
+    warm: &[f64],
+    per_c: &[f64],
+    factor: &[f64],
+    precipitation_mm: f64,
+    snow_fraction: impl Fn(f64, f64, f64) -> f64,
+) {
+    let n = snow.len();
+    let (rain, input, mean) = (&mut rain[..n], &mut input[..n], &mean[..n]);
+    let (warm, per_c, factor) = (&warm[..n], &per_c[..n], &factor[..n]);
+    for lane in 0..n {
+        let fallen = precipitation_mm * factor[lane];
+        let frozen = snow_fraction(mean[lane], warm[lane], per_c[lane]) * fallen;
+        snow[lane] = frozen;
+        rain[lane] = fallen - frozen;
+        input[lane] += fallen;
+    }
+}
+
+/// One day of every lane: the pack, SWE as the next day begins, fluxes and the ledger.
+#[inline(always)]
+#[expect(
+    clippy::too_many_arguments,
+    reason = "a row a parameter, see the top of this file"
+)]
+pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool>(
+    ice: &mut [f64],
+    liquid: &mut [f64],
+    melt: &mut [f64],
+    refreeze: &mut [f64],
+    year_outflow: &mut [f64],
+    year_bare: &mut [f64],
+    swe: &mut [f64],
+    net_melt: &mut [f64],
+    outflow: &mut [f64],
+    bare_ground_rain: &mut [f64],
+    snow: &[f64],
+    rain: &[f64],
+    mean: &[f64],
+    above: &[f64],
+    below: &[f64],
+    factor: &[f64],
+    holding: &[f64],
+    refreezing: &[f64],
+) {
+    let n = ice.len();
+    let (liquid, melt, refreeze) = (&mut liquid[..n], &mut melt[..n], &mut refreeze[..n]);
+    let (year_outflow, year_bare) = (&mut year_outflow[..n], &mut year_bare[..n]);
+    let (swe, net_melt) = (&mut swe[..n], &mut net_melt[..n]);
+    let (outflow, bare_ground_rain) = (&mut outflow[..n], &mut bare_ground_rain[..n]);
+    let (snow, rain, mean, above, below) = (&snow[..n], &rain[..n], &mean[..n], &above[..n], &below[..n]);
+    let (factor, holding, refreezing) = (&factor[..n], &holding[..n], &refreezing[..n]);
+    for lane in 0..n {
+        let pack = Pack {
+            ice_mm: ice[lane],
+            liquid_mm: liquid[lane],
+        };
+        let day = LaneDay {
+            snow_mm: if IS_WET { snow[lane] } else { 0.0 },
+            rain_mm: if IS_WET { rain[lane] } else { 0.0 },
+            mean_c: mean[lane],
+            melt_degrees_c: above[lane],
+            freeze_degrees_c: below[lane],
+            degree_day_factor: factor[lane],
+        };
+        let lane_const = LaneConst {
+            holding_fraction: holding[lane],
+            refreeze_fraction: refreezing[lane],
+        };
+        let (pack, fluxes) = step(pack, day, lane_const);
+        ice[lane] = pack.ice_mm;
+        liquid[lane] = pack.liquid_mm;
+        swe[lane] = pack.ice_mm + pack.liquid_mm;
+        net_melt[lane] = fluxes.melt_mm - fluxes.refreeze_mm;
+        outflow[lane] = fluxes.outflow_mm;
+        year_outflow[lane] += fluxes.outflow_mm;
+        if IS_WET {
+            bare_ground_rain[lane] = fluxes.bare_ground_rain_mm;
+            year_bare[lane] += fluxes.bare_ground_rain_mm;
+        }
+        if WITH_DETAIL {
+            melt[lane] = fluxes.melt_mm;
+            refreeze[lane] = fluxes.refreeze_mm;
+        }
+    }
+}

@@ -1,0 +1,137 @@
+//! The engine against the naive loop: every state and flux of every day, and the basin means.
+
+use super::cases;
+use super::scenario::{Scenario, naive_days, scenarios};
+use crate::naive;
+use proptest::prelude::*;
+use thawline::snow::{Path, YearBlock};
+use thawline::weather::Series;
+
+/// Two ways of adding the same numbers may part by rounding: 1e-9 mm is what the method promises, about a million
+/// times the rounding of a deep snowpack.
+const SAME_MM: f64 = 1e-9;
+
+fn assert_same(engine: f64, naive: f64, what: &str, day: usize) -> Result<(), TestCaseError> {
+    prop_assert!(
+        (engine - naive).abs() <= SAME_MM,
+        "{what} on day {day}: engine {engine}, naive {naive}"
+    );
+    Ok(())
+}
+
+proptest! {
+    #![proptest_config(cases(128))]
+
+    /// The engine gives the states, fluxes and basin means of the method as it is written, on every day of several
+    /// years with snow carried over, for both degree rules and both phase rules, at levels of any sign.
+    #[test]
+    fn engine_is_the_method(scenario in scenarios()) {
+        let series = scenario.climate.series();
+        let lanes = scenario.lanes(&scenario.changes());
+        let blocks = Scenario::run(&lanes, &series, Path::Widest);
+        let (days, starts_bare) = naive_days(&series);
+        let areas: Vec<f64> = scenario.basin.bands.iter().map(|band| band.area_km2).collect();
+        for (mix, level_c) in scenario.levels_c.iter().enumerate() {
+            let mut bands = Vec::new();
+            for band in 0..areas.len() {
+                let naive = naive::run(&scenario.naive_band(band, *level_c), &days, &starts_bare);
+                check_lane(&blocks, &series, lanes.column(mix, band), &naive)?;
+                bands.push(naive);
+            }
+            check_basin(&blocks, &series, mix, &bands, &areas)?;
+        }
+    }
+}
+
+fn check_lane(
+    blocks: &[YearBlock],
+    series: &Series,
+    lane: usize,
+    naive: &[naive::DayResult],
+) -> Result<(), TestCaseError> {
+    for (block, year) in blocks.iter().zip(&series.years) {
+        prop_assert_eq!(block.days, year.days);
+        prop_assert_eq!(block.first, year.first);
+        let detail = block.detail.as_ref().expect("detail was asked for");
+        for day in 0..year.days {
+            let expected = &naive[year.start + day];
+            let (at, at_detail) = (day * block.width + lane, day * detail.width + lane);
+            let net_melt = expected.melt_mm - expected.refreeze_mm;
+            for (what, engine, naive) in [
+                ("mean temperature", detail.mean_c[at_detail], expected.mean_c),
+                ("rain", detail.rain_mm[at_detail], expected.rain_mm),
+                ("snow", detail.snow_mm[at_detail], expected.snow_mm),
+                ("melt", detail.melt_mm[at_detail], expected.melt_mm),
+                ("refreezing", detail.refreeze_mm[at_detail], expected.refreeze_mm),
+                ("ice", detail.ice_mm[at_detail], expected.ice_mm),
+                ("liquid", detail.liquid_mm[at_detail], expected.liquid_mm),
+                ("SWE", block.swe_mm[at], expected.swe_mm),
+                ("net melt", block.net_melt_mm[at], net_melt),
+                ("outflow", block.outflow_mm[at], expected.outflow_mm),
+                (
+                    "bare-ground rain",
+                    block.bare_ground_rain_mm[at],
+                    expected.bare_ground_rain_mm,
+                ),
+            ] {
+                assert_same(engine, naive, what, day + 1)?;
+            }
+        }
+        let last = &naive[year.start + year.days - 1];
+        let end = block.swe_mm[year.days * block.width + lane];
+        assert_same(
+            end,
+            last.ice_mm + last.liquid_mm,
+            "SWE as the year ends",
+            year.days,
+        )?;
+    }
+    Ok(())
+}
+
+fn check_basin(
+    blocks: &[YearBlock],
+    series: &Series,
+    mix: usize,
+    bands: &[Vec<naive::DayResult>],
+    areas: &[f64],
+) -> Result<(), TestCaseError> {
+    for (block, year) in blocks.iter().zip(&series.years) {
+        for day in 0..year.days {
+            let mean = |flux: fn(&naive::DayResult) -> f64| {
+                let values: Vec<f64> = bands.iter().map(|band| flux(&band[year.start + day])).collect();
+                naive::basin_mean(&values, areas)
+            };
+            let at = day * block.width + block.mixes_at + mix;
+            for (what, engine, naive) in [
+                ("basin SWE", block.swe_mm[at], mean(|r| r.swe_mm)),
+                (
+                    "basin net melt",
+                    block.net_melt_mm[at],
+                    mean(|r| r.melt_mm - r.refreeze_mm),
+                ),
+                ("basin outflow", block.outflow_mm[at], mean(|r| r.outflow_mm)),
+                (
+                    "basin bare-ground rain",
+                    block.bare_ground_rain_mm[at],
+                    mean(|r| r.bare_ground_rain_mm),
+                ),
+            ] {
+                assert_same(engine, naive, what, day + 1)?;
+            }
+        }
+        let at_end: Vec<f64> = bands
+            .iter()
+            .map(|band| &band[year.start + year.days - 1])
+            .map(|last| last.ice_mm + last.liquid_mm)
+            .collect();
+        let end = block.swe_mm[year.days * block.width + block.mixes_at + mix];
+        assert_same(
+            end,
+            naive::basin_mean(&at_end, areas),
+            "basin SWE as the year ends",
+            year.days,
+        )?;
+    }
+    Ok(())
+}

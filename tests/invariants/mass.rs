@@ -1,0 +1,86 @@
+//! Water is neither made nor lost, and warmth does not make snow.
+
+use super::cases;
+use super::scenario::{Scenario, scenarios};
+use proptest::prelude::*;
+use thawline::snow::{Path, YearBlock};
+
+proptest! {
+    #![proptest_config(cases(64))]
+
+    /// Rain and snow equal outflow, bare-ground rain and change of SWE, for every lane and year, reckoned from the
+    /// daily table alone; 1e-9 of the larger side, as the method states it.
+    #[test]
+    fn ledger_closes(scenario in scenarios()) {
+        let lanes = scenario.lanes(&scenario.changes());
+        for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
+            for lane in 0..lanes.count() {
+                let input_mm = detail_sum(&block, lane);
+                let end = block.swe_mm[block.days * block.width + lane];
+                let change_mm = end - block.swe_mm[lane];
+                let outflow_mm = column_sum(&block, &block.outflow_mm, lane);
+                let bare_mm = column_sum(&block, &block.bare_ground_rain_mm, lane);
+                let accounted_mm = outflow_mm + bare_mm + change_mm;
+                let larger_mm = input_mm.abs().max(accounted_mm.abs()).max(1.0);
+                prop_assert!((input_mm - accounted_mm).abs() <= 1e-9 * larger_mm, "{input_mm} in, {accounted_mm} out");
+            }
+        }
+    }
+
+    /// No state and no flux but net melt is ever negative, to the last bit; the basin means neither.
+    #[test]
+    fn nothing_is_negative(scenario in scenarios()) {
+        let lanes = scenario.lanes(&scenario.changes());
+        for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
+            let detail = block.detail.as_ref().expect("detail was asked for");
+            let columns = [
+                ("SWE", &block.swe_mm[..(block.days + 1) * block.width]),
+                ("outflow", &block.outflow_mm[..block.days * block.width]),
+                ("bare-ground rain", &block.bare_ground_rain_mm[..block.days * block.width]),
+                ("rain", &detail.rain_mm[..block.days * detail.width]),
+                ("snow", &detail.snow_mm[..block.days * detail.width]),
+                ("melt", &detail.melt_mm[..block.days * detail.width]),
+                ("refreezing", &detail.refreeze_mm[..block.days * detail.width]),
+                ("ice", &detail.ice_mm[..block.days * detail.width]),
+                ("liquid", &detail.liquid_mm[..block.days * detail.width]),
+            ];
+            for (what, values) in columns {
+                for value in values {
+                    prop_assert!(*value >= 0.0, "{what} {value}");
+                }
+            }
+        }
+    }
+
+    /// With precipitation unchanged, a warmer level has no more snowfall in any band on any day, and the same total.
+    #[test]
+    fn warmer_is_never_more_snowfall(mut scenario in scenarios(), more_c in 0.01..5.0) {
+        scenario.warming.precipitation_change_pct_per_c = 0.0;
+        let cool_c = scenario.levels_c[0];
+        let changes = [scenario.warming.at(cool_c), scenario.warming.at(cool_c + more_c)];
+        let lanes = scenario.lanes(&changes);
+        let bands = scenario.basin.bands.len();
+        for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
+            let detail = block.detail.as_ref().expect("detail was asked for");
+            for (day, band) in (0..block.days).flat_map(|day| (0..bands).map(move |band| (day, band))) {
+                let [at_cool, at_warm] = [0, 1].map(|group| day * detail.width + lanes.column(group, band));
+                let (cool, warm) = (detail.snow_mm[at_cool], detail.snow_mm[at_warm]);
+                prop_assert!(warm <= cool, "warming by {more_c} degC turned {cool} mm of snow into {warm} mm");
+                let (cool_all, warm_all) = (cool + detail.rain_mm[at_cool], warm + detail.rain_mm[at_warm]);
+                prop_assert!((cool_all - warm_all).abs() <= 1e-12 * cool_all.max(1.0));
+            }
+        }
+    }
+}
+
+fn column_sum(block: &YearBlock, table: &[f64], lane: usize) -> f64 {
+    (0..block.days).map(|day| table[day * block.width + lane]).sum()
+}
+
+fn detail_sum(block: &YearBlock, lane: usize) -> f64 {
+    let detail = block.detail.as_ref().expect("detail was asked for");
+    (0..block.days)
+        .map(|day| day * detail.width + lane)
+        .map(|at| detail.rain_mm[at] + detail.snow_mm[at])
+        .sum()
+}

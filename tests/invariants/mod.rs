@@ -1,0 +1,21 @@
+//! Properties that hold for every basin, record, warming and parameter set, tried on random ones.
+
+mod degrees;
+mod engine;
+mod ensemble;
+mod mass;
+mod realizations;
+mod same_bits;
+mod scenario;
+mod seasons;
+
+use proptest::test_runner::Config;
+
+/// So many random cases; a failing one is printed, small and whole, and nothing is written into the tree.
+fn cases(count: u32) -> Config {
+    Config {
+        cases: count,
+        failure_persistence: None,
+        ..Config::default()
+    }
+}

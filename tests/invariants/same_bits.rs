@@ -1,0 +1,128 @@
+//! What must not change a result: the CPU's vectors, a level of nothing, the order of the bands.
+
+use super::cases;
+use super::scenario::{Scenario, scenarios};
+use proptest::prelude::*;
+use thawline::perturb::MonthlyChange;
+use thawline::snow::{Engine, Path, YearBlock};
+
+/// The bits of everything in a year that is in use.
+fn bits(block: &YearBlock) -> Vec<u64> {
+    let (end, row) = (block.days * block.width, block.width);
+    let mut values = Vec::new();
+    values.extend_from_slice(&block.swe_mm[..end + row]);
+    values.extend_from_slice(&block.net_melt_mm[..end]);
+    values.extend_from_slice(&block.outflow_mm[..end]);
+    values.extend_from_slice(&block.bare_ground_rain_mm[..end]);
+    if let Some(detail) = &block.detail {
+        let end = block.days * detail.width;
+        for table in [
+            &detail.mean_c,
+            &detail.rain_mm,
+            &detail.snow_mm,
+            &detail.melt_mm,
+            &detail.refreeze_mm,
+            &detail.ice_mm,
+            &detail.liquid_mm,
+        ] {
+            values.extend_from_slice(&table[..end]);
+        }
+    }
+    values.into_iter().map(f64::to_bits).collect()
+}
+
+proptest! {
+    #![proptest_config(cases(48))]
+
+    /// The same bits whatever vectors the CPU has: a study can be repeated on another machine.
+    #[test]
+    fn vectors_do_not_show(scenario in scenarios()) {
+        let series = scenario.climate.series();
+        let lanes = scenario.lanes(&scenario.changes());
+        let widest = Scenario::run(&lanes, &series, Path::Widest);
+        for path in [Path::Avx2, Path::Baseline] {
+            let other = Scenario::run(&lanes, &series, path);
+            for (year, (a, b)) in widest.iter().zip(&other).enumerate() {
+                prop_assert!(bits(a) == bits(b), "{path:?} differs in year {year}");
+            }
+        }
+    }
+
+    /// A level of 0 is the record itself, bit for bit, whatever the monthly shapes and the precipitation change.
+    #[test]
+    fn level_zero_is_the_record(scenario in scenarios()) {
+        let series = scenario.climate.series();
+        let zero = Scenario::run(&scenario.lanes(&[scenario.warming.at(0.0)]), &series, Path::Widest);
+        let record = Scenario::run(&scenario.lanes(&[MonthlyChange::NONE]), &series, Path::Widest);
+        for (a, b) in zero.iter().zip(&record) {
+            prop_assert!(bits(a) == bits(b));
+        }
+    }
+
+    /// Asking for detail changes nothing of what is there without it.
+    #[test]
+    fn detail_does_not_show(scenario in scenarios()) {
+        let series = scenario.climate.series();
+        let lanes = scenario.lanes(&scenario.changes());
+        let with = Scenario::run(&lanes, &series, Path::Widest);
+        let mut engine = Engine::new(&lanes, false);
+        for (year, mut expected) in series.years.iter().zip(with) {
+            if !year.follows {
+                engine.restart();
+            }
+            let block = engine.year(series.view(year)).expect("the ledger is closed");
+            expected.detail = None;
+            prop_assert!(bits(block) == bits(&expected));
+        }
+    }
+
+    /// A lane's neighbours and its place in the row do not matter: each level run alone gives the same bits.
+    #[test]
+    fn neighbours_do_not_show(scenario in scenarios()) {
+        let series = scenario.climate.series();
+        let changes = scenario.changes();
+        let all = scenario.lanes(&changes);
+        let together = Scenario::run(&all, &series, Path::Widest);
+        let bands = scenario.basin.bands.len();
+        for (mix, change) in changes.iter().enumerate() {
+            let alone = Scenario::run(&scenario.lanes(std::slice::from_ref(change)), &series, Path::Widest);
+            for (a, b) in together.iter().zip(&alone) {
+                for day in 0..=a.days {
+                    let (a_row, b_row) = (a.row(&a.swe_mm, day), b.row(&b.swe_mm, day));
+                    for (band, alone) in b_row[..bands].iter().enumerate() {
+                        prop_assert_eq!(a_row[all.column(mix, band)].to_bits(), alone.to_bits());
+                    }
+                    prop_assert_eq!(a_row[a.mixes_at + mix], b_row[b.mixes_at]);
+                }
+            }
+        }
+    }
+
+    /// Bands in any order give the same basin: only the order of the sum changes, hence 1e-9 mm and not bits.
+    #[test]
+    fn order_of_bands_does_not_show(scenario in scenarios(), turn in 0..5_usize) {
+        let series = scenario.climate.series();
+        let mut turned = scenario.clone();
+        turned.basin.bands.reverse();
+        let bands = turned.basin.bands.len();
+        turned.basin.bands.rotate_left(turn % bands);
+        let one = Scenario::run(&scenario.lanes(&scenario.changes()), &series, Path::Widest);
+        let other = Scenario::run(&turned.lanes(&turned.changes()), &series, Path::Widest);
+        for (a, b) in one.iter().zip(&other) {
+            for (a_table, b_table) in [
+                (&a.swe_mm, &b.swe_mm),
+                (&a.net_melt_mm, &b.net_melt_mm),
+                (&a.outflow_mm, &b.outflow_mm),
+                (&a.bare_ground_rain_mm, &b.bare_ground_rain_mm),
+            ] {
+                for day in 0..a.days {
+                    for mix in 0..scenario.levels_c.len() {
+                        let at = day * a.width + a.mixes_at + mix;
+                        let (x, y) = (a_table[at], b_table[at]);
+                        prop_assert!((x - y).abs() <= 1e-9, "{x} and {y} on day {}", day + 1);
+                    }
+                }
+            }
+        }
+    }
+}

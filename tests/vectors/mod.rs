@@ -1,0 +1,71 @@
+//! Values from outside the project, each with its source, its tolerance and the reason for it, run through our code.
+//!
+//! The cases stand as data in the `.toml` files beside this one. `run` names the function that feeds a case's input to
+//! the program; every expected value of a case must be asked for, or the case fails.
+
+mod bands;
+mod calendar;
+mod case;
+mod closed_season;
+mod days;
+mod statistics;
+
+use case::Case;
+
+/// What a case is run through.
+type Runner = fn(&Case);
+
+const RUNNERS: [(&str, Runner); 11] = [
+    ("days", days::days),
+    ("precipitation factor", days::precipitation_factor),
+    ("temperature shift", days::temperature_shift),
+    ("melt over bands", bands::melt_over_bands),
+    ("season over bands", bands::season_over_bands),
+    ("closed season", closed_season::closed_season),
+    ("water-year days", calendar::water_year_days),
+    ("melt dates", calendar::melt_dates),
+    ("quantiles", statistics::quantiles),
+    ("two-way variance", statistics::two_way),
+    ("signal to noise", statistics::noise),
+];
+
+fn run(text: &str) {
+    for case in case::read(text) {
+        let (_, runner) = RUNNERS
+            .iter()
+            .find(|(name, _)| *name == case.run)
+            .unwrap_or_else(|| panic!("{}: nothing is called '{}'", case.id, case.run));
+        runner(&case);
+        case.assert_all_asked();
+    }
+}
+
+/// Degree-day melt, the sine day, melt by rain, rain or snow.
+#[test]
+fn one_day_physics() {
+    run(include_str!("physics.toml"));
+}
+
+/// Seasons that can be solved in closed form: one place, and a basin of bands.
+#[test]
+fn closed_form_seasons() {
+    run(include_str!("seasons.toml"));
+}
+
+/// Changes of temperature and precipitation, and what they must leave alone.
+#[test]
+fn changes() {
+    run(include_str!("changes.toml"));
+}
+
+/// Days of the water year.
+#[test]
+fn water_year() {
+    run(include_str!("calendar.toml"));
+}
+
+/// Quantiles, partition of variance, signal to noise.
+#[test]
+fn statistics_of_small_tables() {
+    run(include_str!("statistics.toml"));
+}
