@@ -1,0 +1,9 @@
+//! The program as a user runs it: whole commands, their output, their files and their exit status.
+
+mod basin;
+mod data_faults;
+mod interrupt;
+mod results;
+mod scenario_faults;
+mod streams;
+mod verdict;

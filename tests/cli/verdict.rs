@@ -1,0 +1,71 @@
+//! The verdict comes from the numbers and turns round when they do.
+
+use super::basin::Basin;
+use serde_json::Value;
+
+fn study(basin: &Basin, scenario: &str) -> (Value, String) {
+    let ended = basin.run(&format!("study {scenario} --into out --force --quiet"));
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    (serde_json::from_str(&basin.read("out/summary.json")).unwrap(), basin.read("out/briefing.html"))
+}
+
+/// In the cold demo basin +1 degC moves 1 April SWE by less than the half spread, and the briefing says so; in the main
+/// demo warming outweighs before +2 degC, and the briefing says that.
+#[test]
+fn both_demos_speak_for_their_numbers() {
+    let basin = Basin::new();
+    assert_eq!(basin.run("start demo --quiet").status, 0);
+    let (cold, page) = study(&basin, "demo/scenarios/frostbell-creek.toml");
+    let headline = &cold["findings"]["basin"][0];
+    let at_one = &headline["levels"][1];
+    let spread = &headline["precipitation_spread"];
+    let half = spread["q50"].as_f64().unwrap() - spread["q05"].as_f64().unwrap();
+    assert!(at_one["shift"]["median"]["value"].as_f64().unwrap().abs() < half);
+    let sentence = cold["answer"]["amounts"][0].as_str().unwrap();
+    assert!(sentence.starts_with("At +1 °C") && sentence.contains("does not outweigh"), "{sentence}");
+    assert!(page.contains(sentence));
+
+    let (main, page) = study(&basin, "demo/scenarios/alder-fork.toml");
+    let ratio = |level: usize| {
+        main["findings"]["basin"][0]["levels"][level]["signal_to_spread"]["value"].as_f64().unwrap()
+    };
+    assert!(ratio(1) < 1.0 && ratio(2) > 1.0);
+    let crossing = main["findings"]["basin"][0]["outweighs"]["level_c"].as_f64().unwrap();
+    assert!((crossing - (1.0 + (1.0 - ratio(1)) / (ratio(2) - ratio(1)))).abs() < 1e-12, "linear between levels");
+    let verdict = main["answer"]["verdict"].as_str().unwrap();
+    assert!(verdict.starts_with(&format!("From about +{crossing:.1} °C of warming on, the warming outweighs")));
+    assert!(page.contains(verdict));
+    let mean = main["record"]["headline_by_year"].as_array().unwrap().iter().map(|y| y["value"].as_f64().unwrap());
+    let (count, sum) = mean.fold((0.0, 0.0), |(count, sum), value| (count + 1.0, sum + value));
+    assert!((300.0..600.0).contains(&(sum / count)), "mean 1 April SWE {}", sum / count);
+}
+
+/// Where the assumed change of mean precipitation is wide enough, precipitation outweighs the same warming in the same
+/// basin, and every word that said otherwise turns round.
+#[test]
+fn a_wide_assumption_turns_the_verdict() {
+    let basin = Basin::new();
+    basin.exchange("count = 12", "count = 60");
+    let (narrow, _) = study(&basin, "scenario.toml");
+    assert_eq!(narrow["findings"]["basin"][0]["outweighs"]["crossing"], "at");
+    basin.exchange("years = 5", "years = 5\nmean_change_sd_pct = 60");
+    let (wide, page) = study(&basin, "scenario.toml");
+    assert_eq!(wide["findings"]["basin"][0]["outweighs"]["crossing"], "not_reached");
+    let verdict = wide["answer"]["verdict"].as_str().unwrap();
+    assert!(verdict.contains("does not outweigh") && page.contains(verdict), "{verdict}");
+}
+
+/// Where no snow lies there is no timing and no percentage: none, counted, and never a zero or a date.
+#[test]
+fn a_basin_without_snow() {
+    let basin = Basin::new();
+    basin.exchange("station_elevation_m = 2000", "station_elevation_m = 5000");
+    let (summary, page) = study(&basin, "scenario.toml");
+    let measures = summary["findings"]["basin"].as_array().unwrap();
+    let of = |name: &str| measures.iter().find(|m| m["measure"]["name"] == name).unwrap();
+    assert_eq!(of("swe_04_01_mm")["levels"][1]["percent_change"], Value::Null);
+    let melt_out = &of("melt_out_day")["levels"][0];
+    assert_eq!((melt_out["periods"]["q50"].as_str(), melt_out["periods"]["none"].as_u64()), (Some("none"), Some(12)));
+    assert_eq!(melt_out["years_undefined"][0], 60);
+    assert!(page.contains("12 none"));
+}
