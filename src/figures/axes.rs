@@ -28,7 +28,6 @@ impl AmountTicks {
         let count = (1..=steps)
             .find(|count| value(mantissa * *count as i64, power) >= highest)
             .unwrap_or(steps);
-        let last = value(mantissa * count as i64, power);
         let step = value(mantissa, power);
         let decimals = (0..9)
             .find(|decimals| {
@@ -42,7 +41,6 @@ impl AmountTicks {
                 (tick, grouped(tick, decimals as usize))
             })
             .collect();
-        debug_assert!(last >= highest);
         Self { ticks }
     }
 

@@ -62,8 +62,8 @@ pub(super) fn marker(sheet: &Sheet, (x, y): Px, marking: Marking) -> Drawn {
 
 /// An arrow head at a place: the interval goes on beyond the axis.
 pub(super) fn arrow(sheet: &Sheet, (x, y): Px, forwards: bool, ink: RGBColor) -> Drawn {
-    let back = if forwards { -7.0 } else { 7.0 };
-    sheet.shape(&[(x, y), (x + back, y - 4.0), (x + back, y + 4.0)], ink)
+    let back = if forwards { -9.0 } else { 9.0 };
+    sheet.shape(&[(x, y), (x + back, y - 5.5), (x + back, y + 5.5)], ink)
 }
 
 /// How large dots are and how far apart, px.

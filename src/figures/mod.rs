@@ -10,6 +10,7 @@ mod labels;
 mod marks;
 mod melt_timing;
 mod page;
+mod reading;
 mod sheet;
 mod swe_by_level;
 mod text_width;

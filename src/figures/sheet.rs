@@ -61,6 +61,7 @@ pub(super) struct Plot {
 impl Sheet {
     /// A white sheet.
     pub fn new(height_px: f64) -> Drawn<Self> {
+        let height_px = height_px.ceil();
         let backend = Rc::new(RefCell::new(SvgBackend::new(WIDTH_PX, height_px)));
         let sheet = Self {
             area: (&backend).into(),
@@ -147,7 +148,7 @@ impl Sheet {
 
     /// The whole document. `title` and `description` are what a screen reader says.
     pub fn document(&self, slug: &str, title: &str, description: &str) -> String {
-        let (width, height) = (fine(WIDTH_PX) / 10, fine(self.height_px.ceil()) / 10);
+        let (width, height) = (fine(WIDTH_PX) / 10, fine(self.height_px) / 10);
         let mut svg = format!(
             "<svg xmlns=\"http://www.w3.org/2000/svg\" class=\"figure {slug}\" width=\"{width}\" height=\"{height}\" \
              viewBox=\"0 0 {width} {height}\" role=\"img\" aria-labelledby=\"{slug}-title {slug}-desc\" \

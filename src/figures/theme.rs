@@ -24,9 +24,9 @@ pub const BAND: RGBColor = RGBColor(0xe9, 0xef, 0xf2);
 
 /// Warmer levels, from the least warm: lightness falls all the way, so that the order stands in grey.
 const WARMER: [RGBColor; 4] = [
-    RGBColor(0x4d, 0x93, 0xb8),
-    RGBColor(0x95, 0x72, 0x96),
-    RGBColor(0xbd, 0x4b, 0x40),
+    RGBColor(0x42, 0x89, 0xaf),
+    RGBColor(0x8e, 0x6a, 0x90),
+    RGBColor(0xb8, 0x46, 0x3c),
     RGBColor(0x5f, 0x1c, 0x14),
 ];
 /// Levels colder than the reference, from the nearest.

@@ -2,6 +2,7 @@
 
 use super::super::ensemble;
 use super::super::labels::{day_of_month, level, sentence};
+use super::super::reading::Reading;
 use crate::calendar::WaterYearStart;
 use crate::findings::{Findings, MeasureFindings};
 use crate::season::Outcome;
@@ -28,29 +29,14 @@ impl Words {
         } else {
             format!("median of {} years", findings.years)
         };
-        let with_spread = measures.iter().any(|found| found.precipitation_spread.is_some());
-        let (spread_key, band) = if with_spread {
-            (
-                "The spread: from the reference median (dashed) to the edge of the grey band that the shift points to; \
-                 the band holds 9 in 10 realizations at the reference. ",
-                "The grey band holds 5–95 % of the realizations at the reference: the precipitation spread with its own \
-                 temperatures; \u{201c}× the spread\u{201d} is the median shift over the half of it that the shift points \
-                 to, and above 1 the shift outweighs the spread. ",
-            )
-        } else {
-            ("", "The reference has no precipitation spread to draw. ")
-        };
+        let reading = Reading::of(findings, measures, "shift", false);
         Self {
-            key: format!(
-                "Marker: median; thick line: middle half (25–75 %); thin line: 5–95 %. {spread_key}Lines and band are \
-                 chance between realizations, not day-to-day variation."
-            ),
+            key: reading.key(),
             caption: format!(
-                "{names}, basin mean, {years}, at each warming level over {ensemble}. Marker: median; thick line: 25–75 %; \
-                 thin line: 5–95 %; an arrow: the interval goes on where snow is not gone by the end of the water year, or \
-                 where there is nothing to time. Shifts are medians of paired shifts from the reference. {band}Band and \
-                 lines show uncertainty from chance between realizations, not day-to-day variation and not single years. \
-                 Dates are those of a year without 29 February."
+                "{names}, basin mean, {years}, at each warming level over {ensemble}. {} An arrow: the interval goes on \
+                 where snow is not gone by the end of the water year, or where there is nothing to time. Dates are those \
+                 of a year without 29 February.",
+                reading.caption()
             ),
             kind_of_drawing: format!(
                 "Point-intervals of {} levels on a calendar.",
@@ -61,7 +47,7 @@ impl Words {
                 .map(|found| described(findings, found, starts))
                 .collect::<Vec<_>>()
                 .join(" "),
-            ensemble: format!("{ensemble}; precipitation spread with its own temperatures"),
+            ensemble: reading.ensemble(findings),
         }
     }
 }

@@ -23,6 +23,22 @@ pub(super) const BESIDE_POINT_PX: f64 = 11.0;
 /// Share of an even column that the tightest must have for levels to stand in proportion.
 const LEAST_SHARE: f64 = 0.8;
 
+/// Whether these levels stand as far apart as they are.
+pub(super) fn is_to_scale(levels_c: &[f64]) -> bool {
+    let (Some(first), Some(last)) = (levels_c.first(), levels_c.last()) else {
+        return false;
+    };
+    let share = tightest(levels_c) / (last - first + tightest(levels_c));
+    share * levels_c.len() as f64 >= LEAST_SHARE
+}
+
+fn tightest(levels_c: &[f64]) -> f64 {
+    levels_c
+        .windows(2)
+        .map(|pair| pair[1] - pair[0])
+        .fold(f64::INFINITY, f64::min)
+}
+
 impl Columns {
     /// Places ascending levels between two edges.
     pub fn new(levels_c: &[f64], left: f64, right: f64) -> Self {
@@ -33,24 +49,16 @@ impl Columns {
                 .map(|at| left + even * (at as f64 + 0.5))
                 .collect()
         };
-        let tightest = levels_c
-            .windows(2)
-            .map(|pair| pair[1] - pair[0])
-            .fold(f64::INFINITY, f64::min);
-        let (Some(first), Some(last)) = (levels_c.first(), levels_c.last()) else {
-            return Self {
-                centres: Vec::new(),
-                width: even,
-            };
-        };
-        // The outer columns need half a tightest column beside them.
-        let width = (right - left) * tightest / (last - first + tightest);
-        if !width.is_finite() || width < LEAST_SHARE * even {
+        let (true, Some(first), Some(last)) = (is_to_scale(levels_c), levels_c.first(), levels_c.last())
+        else {
             return Self {
                 centres: evenly(),
                 width: even,
             };
-        }
+        };
+        // The outer columns need half a tightest column beside them.
+        let tightest = tightest(levels_c);
+        let width = (right - left) * tightest / (last - first + tightest);
         let per_degree = width / tightest;
         Self {
             centres: levels_c

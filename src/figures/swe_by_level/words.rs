@@ -2,7 +2,9 @@
 
 use super::super::ensemble;
 use super::super::labels::{level, sentence, size};
+use super::super::reading::Reading;
 use super::super::theme::{LABEL, Lettering, NAME};
+use super::columns::is_to_scale;
 use crate::findings::{DOTS, Findings, MeasureFindings, Spread};
 use crate::season::Outcome;
 
@@ -26,37 +28,15 @@ impl Words {
             format!("{}-year mean", findings.years)
         };
         let dots = findings.realizations >= DOTS;
-        let dot_key = if dots {
-            "Each dot: 1 in 20 realizations. "
-        } else {
+        let reading = Reading::of(findings, &[measure], "change", dots);
+        let scale = if findings.levels_c.len() < 2 || is_to_scale(&findings.levels_c) {
             ""
-        };
-        let with_spread = measure.precipitation_spread.is_some();
-        let spread_key = if with_spread {
-            "The spread: from the reference median (dashed) to the edge of the grey band that the change points to. "
         } else {
-            ""
-        };
-        let key = format!(
-            "{dot_key}Marker: median; thick line: middle half (25–75 %); thin line: 5–95 %. {spread_key}Dots, lines and \
-             band are chance between realizations, not day-to-day variation."
-        );
-        let band = if with_spread {
-            "The grey band holds 5–95 % of the realizations at the reference: the precipitation spread with its own \
-             temperatures. \u{201c}× the spread\u{201d} is the median change over the half of that band that it points \
-             to; above 1 the change outweighs the spread. "
-        } else {
-            "The reference has no precipitation spread to draw. "
-        };
-        let dot_caption = if dots {
-            " Each dot stands for 1 in 20 of them."
-        } else {
-            ""
+            " Levels stand evenly, not to scale."
         };
         let caption = format!(
-            "{name}, basin mean, {years}, at each warming level over {ensemble}.{dot_caption} Marker: median; thick line: \
-             25–75 %; thin line: 5–95 %. Changes are medians of paired changes from the reference. {band}Band, lines and \
-             dots show uncertainty from chance between realizations, not day-to-day variation and not single years."
+            "{name}, basin mean, {years}, at each warming level over {ensemble}. {}{scale}",
+            reading.caption()
         );
         let described = measure.levels.iter().enumerate().map(|(at, found)| {
             let label = if at == findings.reference {
@@ -86,10 +66,10 @@ impl Words {
             ),
             description: format!(
                 "{name}, {ensemble}. {}.",
-                described.collect::<Vec<_>>().join("; ")
+                sentence(&described.collect::<Vec<_>>().join("; "))
             ),
-            ensemble: format!("{ensemble}; precipitation spread with its own temperatures"),
-            key,
+            ensemble: reading.ensemble(findings),
+            key: format!("{}{scale}", reading.key()),
             caption,
         }
     }
