@@ -92,11 +92,7 @@ impl WaterYearStart {
     /// The water year that holds a date, named for the calendar year in which it ends.
     pub fn water_year_of(self, date: NaiveDate) -> i32 {
         let calendar_year = date.year();
-        let began = if date >= self.0.in_year(calendar_year) {
-            calendar_year
-        } else {
-            calendar_year - 1
-        };
+        let began = if date >= self.0.in_year(calendar_year) { calendar_year } else { calendar_year - 1 };
         began + self.years_to_its_end()
     }
 
@@ -126,19 +122,13 @@ impl WaterYearStart {
 /// ```
 pub fn day_of_water_year(first: NaiveDate, day: MonthDay) -> usize {
     let same = day.in_year(first.year());
-    let date = if same >= first {
-        same
-    } else {
-        day.in_year(first.year() + 1)
-    };
+    let date = if same >= first { same } else { day.in_year(first.year() + 1) };
     days_between(first, date) + 1
 }
 
 /// The date of day `day` (from 1) of the water year that starts on `first`.
 pub fn date_of(first: NaiveDate, day: usize) -> NaiveDate {
-    first
-        .checked_add_days(Days::new(day as u64 - 1))
-        .unwrap_or(NaiveDate::MAX)
+    first.checked_add_days(Days::new(day as u64 - 1)).unwrap_or(NaiveDate::MAX)
 }
 
 /// Whole days from `from` to `to`; 0 where `to` is earlier.

@@ -71,10 +71,7 @@ pub struct Unlikely {
 impl Unlikely {
     /// Names what the notice is about and why it was raised.
     pub fn new(about: impl Into<String>, why: impl Into<String>) -> Self {
-        Self {
-            about: about.into(),
-            why: why.into(),
-        }
+        Self { about: about.into(), why: why.into() }
     }
 }
 
@@ -90,11 +87,7 @@ pub fn within(
     mend: &str,
 ) {
     if !range.contains(&value) {
-        let unit = if unit.is_empty() {
-            String::new()
-        } else {
-            format!(" {unit}")
-        };
+        let unit = if unit.is_empty() { String::new() } else { format!(" {unit}") };
         faults.push(Fault::key(
             key,
             value,

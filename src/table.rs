@@ -18,10 +18,7 @@ pub struct Format {
 
 impl Default for Format {
     fn default() -> Self {
-        Self {
-            separator: b',',
-            comment: Some(b'#'),
-        }
+        Self { separator: b',', comment: Some(b'#') }
     }
 }
 
@@ -76,14 +73,7 @@ impl<'a> Table<'a> {
         }
         let (header_line, header_text) = line_at(text, header.position(), format.comment);
         header.trim();
-        Ok(Self {
-            file,
-            text,
-            format,
-            header,
-            header_line,
-            header_text,
-        })
+        Ok(Self { file, text, format, header, header_line, header_text })
     }
 
     /// The column of a name.
@@ -91,18 +81,11 @@ impl<'a> Table<'a> {
     /// # Errors
     /// Names the columns that there are, when there is none of this name or more than one.
     pub fn column(&self, name: &str) -> Result<usize, Fault> {
-        let mut places = self
-            .header
-            .iter()
-            .enumerate()
-            .filter(|(_, have)| *have == name)
-            .map(|(i, _)| i);
+        let mut places = self.header.iter().enumerate().filter(|(_, have)| *have == name).map(|(i, _)| i);
         match (places.next(), places.next()) {
             (Some(column), None) => Ok(column),
-            (Some(_), Some(_)) => Err(self.header_fault(
-                format!("more than one column called '{name}'"),
-                "rename all but one of them",
-            )),
+            (Some(_), Some(_)) => Err(self
+                .header_fault(format!("more than one column called '{name}'"), "rename all but one of them")),
             (None, _) => Err(self.header_fault(
                 format!("no column called '{name}'"),
                 "name one of the columns that stand there, letter for letter",
@@ -270,9 +253,5 @@ fn cell_bytes(line: &str, column: usize, separator: u8) -> std::ops::Range<usize
             start = at + 1;
         }
     }
-    if seen == column {
-        start..line.len()
-    } else {
-        0..line.len()
-    }
+    if seen == column { start..line.len() } else { 0..line.len() }
 }

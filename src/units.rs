@@ -18,11 +18,8 @@ pub enum TemperatureUnit {
 
 impl TemperatureUnit {
     /// Every unit by the name a scenario gives it.
-    pub const NAMES: [(&'static str, Self); 3] = [
-        ("degC", Self::Celsius),
-        ("degF", Self::Fahrenheit),
-        ("K", Self::Kelvin),
-    ];
+    pub const NAMES: [(&'static str, Self); 3] =
+        [("degC", Self::Celsius), ("degF", Self::Fahrenheit), ("K", Self::Kelvin)];
 
     /// A temperature in this unit, in degC.
     pub fn to_celsius(self, value: f64) -> f64 {
@@ -50,11 +47,8 @@ pub enum DepthUnit {
 
 impl DepthUnit {
     /// Every unit by the name a scenario gives it.
-    pub const NAMES: [(&'static str, Self); 3] = [
-        ("mm", Self::Millimetre),
-        ("cm", Self::Centimetre),
-        ("in", Self::Inch),
-    ];
+    pub const NAMES: [(&'static str, Self); 3] =
+        [("mm", Self::Millimetre), ("cm", Self::Centimetre), ("in", Self::Inch)];
 
     /// A depth in this unit, in mm.
     pub fn to_millimetres(self, value: f64) -> f64 {

@@ -116,11 +116,7 @@ pub fn precipitation(station_mm: f64, band: &Band) -> f64 {
         station_m = band.precipitation_top_m;
     }
     let multiplier = 1.0 + band.precipitation_gradient_per_100m * (elevation_m - station_m) / 100.0;
-    if multiplier < 0.0 {
-        0.0
-    } else {
-        changed * multiplier
-    }
+    if multiplier < 0.0 { 0.0 } else { changed * multiplier }
 }
 
 /// Section 5: the share that falls as snow.
@@ -166,11 +162,7 @@ pub fn sine_degrees(tmin_c: f64, tmax_c: f64, base_c: f64) -> (f64, f64) {
 
 /// Section 6: degrees of the daily mean.
 pub fn mean_degrees(mean_c: f64, base_c: f64) -> (f64, f64) {
-    if mean_c > base_c {
-        (mean_c - base_c, 0.0)
-    } else {
-        (0.0, base_c - mean_c)
-    }
+    if mean_c > base_c { (mean_c - base_c, 0.0) } else { (0.0, base_c - mean_c) }
 }
 
 /// Section 6: the degree-day factor of a calendar day.
@@ -184,30 +176,15 @@ pub fn degree_day_factor(band: &Band, day_of_year: f64) -> f64 {
 /// factor.
 pub fn day(band: &Band, factor: f64, ice_mm: f64, liquid_mm: f64, day: Day) -> DayResult {
     let month = day.month - 1;
-    let tmin_c = temperature(
-        day.tmin_c,
-        band.tmin_shape[month],
-        band.tmin_gradient_c_per_km[month],
-        band,
-    );
-    let tmax_c = temperature(
-        day.tmax_c,
-        band.tmax_shape[month],
-        band.tmax_gradient_c_per_km[month],
-        band,
-    );
+    let tmin_c = temperature(day.tmin_c, band.tmin_shape[month], band.tmin_gradient_c_per_km[month], band);
+    let tmax_c = temperature(day.tmax_c, band.tmax_shape[month], band.tmax_gradient_c_per_km[month], band);
     let mean_c = (tmin_c + tmax_c) / 2.0;
     let fallen_mm = precipitation(day.precipitation_mm, band);
     let snow_mm = snow_fraction(band.phase, mean_c) * fallen_mm;
     let rain_mm = fallen_mm - snow_mm;
 
-    let mut result = DayResult {
-        mean_c,
-        rain_mm,
-        snow_mm,
-        swe_mm: ice_mm + liquid_mm,
-        ..DayResult::default()
-    };
+    let mut result =
+        DayResult { mean_c, rain_mm, snow_mm, swe_mm: ice_mm + liquid_mm, ..DayResult::default() };
     if ice_mm + liquid_mm == 0.0 && snow_mm == 0.0 {
         result.bare_ground_rain_mm = rain_mm;
         return result;
@@ -224,22 +201,14 @@ pub fn day(band: &Band, factor: f64, ice_mm: f64, liquid_mm: f64, day: Day) -> D
     if mean_c > 0.0 {
         potential_mm += 0.0125 * rain_mm * mean_c;
     }
-    result.melt_mm = if potential_mm > ice_mm {
-        ice_mm
-    } else {
-        potential_mm
-    };
+    result.melt_mm = if potential_mm > ice_mm { ice_mm } else { potential_mm };
     ice_mm -= result.melt_mm;
 
     liquid_mm += result.melt_mm + rain_mm;
 
     if ice_mm > 0.0 {
         let can_freeze_mm = band.refreeze_fraction * factor * below;
-        result.refreeze_mm = if can_freeze_mm > liquid_mm {
-            liquid_mm
-        } else {
-            can_freeze_mm
-        };
+        result.refreeze_mm = if can_freeze_mm > liquid_mm { liquid_mm } else { can_freeze_mm };
     }
     ice_mm += result.refreeze_mm;
     liquid_mm -= result.refreeze_mm;

@@ -41,11 +41,7 @@ pub fn peak(swe_mm: &[f64]) -> (f64, usize) {
 /// The day of the peak.
 pub fn peak_day(swe_mm: &[f64]) -> When {
     let (largest, on_day) = peak(swe_mm);
-    if largest < LEAST_PEAK_MM {
-        When::None
-    } else {
-        When::Day(on_day)
-    }
+    if largest < LEAST_PEAK_MM { When::None } else { When::Day(on_day) }
 }
 
 /// First day on which cumulative net melt reaches a share of its total.

@@ -27,17 +27,9 @@ pub struct Band {
 pub fn read_bands(file: &str, text: &str) -> Result<Vec<Band>, Vec<Fault>> {
     let table = Table::open(file, text, Format::default()).map_err(|fault| vec![fault])?;
     let columns = ["lower_m", "upper_m", "area_km2"].map(|name| table.column(name));
-    let mean = if table.has("mean_m") {
-        table.column("mean_m").map(Some)
-    } else {
-        Ok(None)
-    };
+    let mean = if table.has("mean_m") { table.column("mean_m").map(Some) } else { Ok(None) };
     let ([Ok(lower), Ok(upper), Ok(area)], Ok(mean)) = (&columns, &mean) else {
-        return Err(columns
-            .into_iter()
-            .filter_map(Result::err)
-            .chain(mean.err())
-            .collect());
+        return Err(columns.into_iter().filter_map(Result::err).chain(mean.err()).collect());
     };
 
     let mut tally = Tally::default();
@@ -51,11 +43,7 @@ pub fn read_bands(file: &str, text: &str) -> Result<Vec<Band>, Vec<Fault>> {
             }
         };
         let mut number = |column: usize| {
-            let value = row
-                .cell(column)
-                .parse::<f64>()
-                .ok()
-                .filter(|value| value.is_finite());
+            let value = row.cell(column).parse::<f64>().ok().filter(|value| value.is_finite());
             if value.is_none() {
                 tally.push(table.cell_fault(&row, column, "a number", "write it with a decimal point"));
             }
@@ -94,15 +82,7 @@ pub fn read_bands(file: &str, text: &str) -> Result<Vec<Band>, Vec<Fault>> {
             ));
         }
         let elevation_m = stated_m.map_or((lower_m + upper_m) / 2.0, |(_, mean_m)| mean_m);
-        bands.push((
-            row.line,
-            Band {
-                lower_m,
-                upper_m,
-                area_km2,
-                elevation_m,
-            },
-        ));
+        bands.push((row.line, Band { lower_m, upper_m, area_km2, elevation_m }));
     }
     bands.sort_by(|(_, a), (_, b)| a.lower_m.total_cmp(&b.lower_m));
     for pair in bands.windows(2) {

@@ -15,10 +15,7 @@ pub struct TemperatureGradient {
 impl TemperatureGradient {
     /// One gradient for every month, minima and maxima alike.
     pub fn constant(c_per_km: f64) -> Self {
-        Self {
-            tmin_c_per_km: [c_per_km; 12],
-            tmax_c_per_km: [c_per_km; 12],
-        }
+        Self { tmin_c_per_km: [c_per_km; 12], tmax_c_per_km: [c_per_km; 12] }
     }
 }
 
@@ -34,10 +31,7 @@ pub struct PrecipitationGradient {
 impl PrecipitationGradient {
     /// A linear gradient, held constant above `top_m` where that is stated.
     pub fn new(pct_per_100m: f64, top_m: Option<f64>) -> Self {
-        Self {
-            pct_per_100m,
-            top_m: top_m.unwrap_or(f64::INFINITY),
-        }
+        Self { pct_per_100m, top_m: top_m.unwrap_or(f64::INFINITY) }
     }
 
     /// Precipitation at `elevation_m` over precipitation at the station:

@@ -38,6 +38,15 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
     let mut faults = std::mem::take(&mut draft.faults);
     let bands = take(read_bands_of(&draft, &folder), &mut faults).flatten();
     let record = take(read_record_of(&draft, &folder), &mut faults).flatten();
+    for (key, name) in &draft.named_files {
+        let is_read = match *key {
+            "basin.bands" => draft.basin.is_some(),
+            _ => draft.weather.is_some() && draft.season.is_some(),
+        };
+        if !is_read {
+            faults.extend(read_data(&folder, name, key).err());
+        }
+    }
     match (draft.complete(), bands, record) {
         (Some(scenario), Some((bands, bands_file)), Some((record, weather_file))) if faults.is_empty() => {
             let basin = Basin {
@@ -47,30 +56,12 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 precipitation: scenario.basin.precipitation,
             };
             let mut weather = record.series.clone();
-            correct_catch(
-                &mut weather,
-                scenario.weather.gauge_multiplier,
-                scenario.snow.rain_snow,
-            );
+            correct_catch(&mut weather, scenario.weather.gauge_multiplier, scenario.snow.rain_snow);
             let files = vec![file.clone(), bands_file, weather_file];
             let (unlikely, defaults) = (draft.unlikely, draft.defaults);
-            Ok(Ready {
-                scenario,
-                basin,
-                record,
-                weather,
-                unlikely,
-                defaults,
-                files,
-                stem,
-            })
+            Ok(Ready { scenario, basin, record, weather, unlikely, defaults, files, stem })
         }
-        _ => Err(input_failure(
-            &faults,
-            &file.name,
-            &file.text,
-            shared.is_coloured(),
-        )),
+        _ => Err(input_failure(&faults, &file.name, &file.text, shared.is_coloured())),
     }
 }
 
@@ -110,12 +101,7 @@ fn take<T>(result: Result<T, Vec<Fault>>, faults: &mut Vec<Fault>) -> Option<T> 
 /// Faults as a failure, drawn against the scenario's text.
 pub(super) fn input_failure(faults: &[Fault], file: &str, text: &str, is_coloured: bool) -> Failure {
     let document = Document::parse(text);
-    let drawing = Drawing {
-        file,
-        text,
-        document: &document,
-        is_coloured,
-    };
+    let drawing = Drawing { file, text, document: &document, is_coloured };
     Failure::Input {
         drawn: draw(faults, &drawing),
         faults: faults.iter().map(|fault| located(fault, &drawing)).collect(),
@@ -130,8 +116,7 @@ impl Ready {
 
     /// Basin-mean over station precipitation.
     pub fn precipitation_ratio(&self) -> f64 {
-        self.basin
-            .precipitation_ratio(self.scenario.weather.station_elevation_m)
+        self.basin.precipitation_ratio(self.scenario.weather.station_elevation_m)
     }
 
     /// Lanes of every band under each change, and a basin mean for each.

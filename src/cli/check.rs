@@ -57,13 +57,7 @@ fn document(ready: &Ready) -> Checked<'_> {
         title: &scenario.title,
         seed: scenario.seed,
         record: &ready.record.counts,
-        water_years_in_use: ready
-            .record
-            .series
-            .years
-            .iter()
-            .map(|year| year.water_year)
-            .collect(),
+        water_years_in_use: ready.record.series.years.iter().map(|year| year.water_year).collect(),
         water_years_left_out: &ready.record.skipped,
         station_precipitation_mm_per_year: station_mm,
         basin_precipitation_mm_per_year: station_mm * ready.precipitation_ratio(),
@@ -73,11 +67,7 @@ fn document(ready: &Ready) -> Checked<'_> {
         snow: &scenario.snow,
         levels_c: &scenario.warming.levels_c,
         defaults_in_force: &ready.defaults,
-        unlikely: ready
-            .unlikely
-            .iter()
-            .map(|notice| format!("{}: {}", notice.about, notice.why))
-            .collect(),
+        unlikely: ready.unlikely.iter().map(|notice| format!("{}: {}", notice.about, notice.why)).collect(),
     }
 }
 
@@ -88,17 +78,12 @@ fn words(ready: &Ready) -> String {
     };
     let counts = &ready.record.counts;
     line("title", ready.scenario.title.clone());
-    line(
-        "record",
-        format!("{} to {}, {} days", counts.first, counts.last, counts.days),
-    );
+    line("record", format!("{} to {}, {} days", counts.first, counts.last, counts.days));
     let years = &ready.record.series.years;
     let span = years
         .first()
         .zip(years.last())
-        .map_or(String::new(), |(first, last)| {
-            format!(", from {} to {}", first.water_year, last.water_year)
-        });
+        .map_or(String::new(), |(first, last)| format!(", from {} to {}", first.water_year, last.water_year));
     line("water years in use", format!("{}{span}", years.len()));
     for year in &ready.record.skipped {
         let why: Vec<String> = year.why.iter().map(ToString::to_string).collect();
@@ -112,10 +97,7 @@ fn words(ready: &Ready) -> String {
             counts.temperature_missing_days, counts.interpolated_days
         ),
     );
-    line(
-        "  minimum above maximum",
-        format!("{} days, taken as missing", counts.crossed_temperature_days),
-    );
+    line("  minimum above maximum", format!("{} days, taken as missing", counts.crossed_temperature_days));
     line(
         "precipitation missing",
         format!(
@@ -136,10 +118,7 @@ fn words(ready: &Ready) -> String {
         );
     }
     let (station_mm, ratio) = (ready.mean_precipitation_mm(), ready.precipitation_ratio());
-    line(
-        "station precipitation",
-        format!("{} a year, catch corrected", amount(station_mm)),
-    );
+    line("station precipitation", format!("{} a year, catch corrected", amount(station_mm)));
     line(
         "basin precipitation",
         format!(
@@ -149,16 +128,10 @@ fn words(ready: &Ready) -> String {
         ),
     );
     let bands = &ready.basin.bands;
-    let range = bands
-        .first()
-        .zip(bands.last())
-        .map_or(String::new(), |(low, high)| {
-            format!(", {} to {} m", fixed(low.lower_m, 0), fixed(high.upper_m, 0))
-        });
-    line(
-        "bands",
-        format!("{}{range}, {} km2", bands.len(), fixed(ready.basin.area_km2(), 1)),
-    );
+    let range = bands.first().zip(bands.last()).map_or(String::new(), |(low, high)| {
+        format!(", {} to {} m", fixed(low.lower_m, 0), fixed(high.upper_m, 0))
+    });
+    line("bands", format!("{}{range}, {} km2", bands.len(), fixed(ready.basin.area_km2(), 1)));
     line("levels, degC", format!("{:?}", ready.scenario.warming.levels_c));
     line("snow model", "not fitted to observed snow".to_owned());
     for default in &ready.defaults {

@@ -12,9 +12,7 @@ use std::path::Path;
 /// Runs the command: to standard output, or into `daily.csv` of the folder that `--into` names.
 pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     if shared.json {
-        return Err(Failure::CommandLine(
-            "--json is not for daily, whose output is a CSV table".to_owned(),
-        ));
+        return Err(Failure::CommandLine("--json is not for daily, whose output is a CSV table".to_owned()));
     }
     let ready = assemble(path, shared)?;
     let lanes = ready.lanes(&[MonthlyChange::NONE]);

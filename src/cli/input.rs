@@ -34,26 +34,15 @@ pub(super) struct ScenarioFile {
 /// Reads the scenario; `-` is standard input.
 pub(super) fn read_scenario(path: &Path) -> Result<ScenarioFile, Failure> {
     let is_stdin = path.as_os_str() == "-";
-    let name = if is_stdin {
-        "standard input".to_owned()
-    } else {
-        path.display().to_string()
-    };
+    let name = if is_stdin { "standard input".to_owned() } else { path.display().to_string() };
     let bytes = if is_stdin {
         bounded(io::stdin().lock(), LONGEST_SCENARIO)
     } else {
         File::open(path).and_then(|file| bounded(file, LONGEST_SCENARIO))
     };
-    let text = bytes
-        .map_err(|error| described(&error, LONGEST_SCENARIO))
-        .and_then(decode);
-    let file = text
-        .map(|(text, sha256)| InputFile {
-            name: name.clone(),
-            text,
-            sha256,
-        })
-        .map_err(|found| {
+    let text = bytes.map_err(|error| described(&error, LONGEST_SCENARIO)).and_then(decode);
+    let file =
+        text.map(|(text, sha256)| InputFile { name: name.clone(), text, sha256 }).map_err(|found| {
             let fault = Fault {
                 place: Place::File(name),
                 found,
@@ -62,26 +51,16 @@ pub(super) fn read_scenario(path: &Path) -> Result<ScenarioFile, Failure> {
             };
             super::assemble::input_failure(&[fault], "", "", false)
         })?;
-    let folder = if is_stdin {
-        PathBuf::new()
-    } else {
-        path.parent().unwrap_or(Path::new("")).to_owned()
-    };
-    let stem = if is_stdin {
-        None
-    } else {
-        path.file_stem().map(|stem| stem.to_string_lossy().into_owned())
-    };
+    let folder = if is_stdin { PathBuf::new() } else { path.parent().unwrap_or(Path::new("")).to_owned() };
+    let stem = if is_stdin { None } else { path.file_stem().map(|stem| stem.to_string_lossy().into_owned()) };
     Ok(ScenarioFile { file, folder, stem })
 }
 
 /// Reads a data file that a scenario names with `key`.
 pub(super) fn read_data(folder: &Path, name: &str, key: &str) -> Result<InputFile, Fault> {
     let bytes = File::open(folder.join(name)).and_then(|file| bounded(file, LONGEST_DATA));
-    let (text, sha256) = bytes
-        .map_err(|error| described(&error, LONGEST_DATA))
-        .and_then(decode)
-        .map_err(|found| {
+    let (text, sha256) =
+        bytes.map_err(|error| described(&error, LONGEST_DATA)).and_then(decode).map_err(|found| {
             Fault::key(
                 key,
                 format!("{name}: {found}"),
@@ -89,21 +68,13 @@ pub(super) fn read_data(folder: &Path, name: &str, key: &str) -> Result<InputFil
                 "the path is relative to the scenario's folder",
             )
         })?;
-    Ok(InputFile {
-        name: name.to_owned(),
-        text,
-        sha256,
-    })
+    Ok(InputFile { name: name.to_owned(), text, sha256 })
 }
 
 fn bounded(file: impl Read, most: u64) -> io::Result<Vec<u8>> {
     let mut bytes = Vec::new();
     file.take(most + 1).read_to_end(&mut bytes)?;
-    if bytes.len() as u64 > most {
-        Err(ErrorKind::FileTooLarge.into())
-    } else {
-        Ok(bytes)
-    }
+    if bytes.len() as u64 > most { Err(ErrorKind::FileTooLarge.into()) } else { Ok(bytes) }
 }
 
 fn described(error: &io::Error, most: u64) -> String {
@@ -121,11 +92,7 @@ fn decode(bytes: Vec<u8>) -> Result<(String, String), String> {
     }
     let text = String::from_utf8(bytes).map_err(|error| {
         let at = error.utf8_error().valid_up_to();
-        let line = error.as_bytes()[..at]
-            .iter()
-            .filter(|byte| **byte == b'\n')
-            .count()
-            + 1;
+        let line = error.as_bytes()[..at].iter().filter(|byte| **byte == b'\n').count() + 1;
         format!("line {line} is not UTF-8")
     })?;
     if text.contains('\0') {

@@ -7,9 +7,7 @@ use std::io::{self, ErrorKind, Write};
 /// Writes to standard output and flushes.
 pub(super) fn print(text: &[u8]) -> Result<(), Failure> {
     let mut out = io::stdout().lock();
-    out.write_all(text)
-        .and_then(|()| out.flush())
-        .map_err(|error| written(&error))
+    out.write_all(text).and_then(|()| out.flush()).map_err(|error| written(&error))
 }
 
 /// Prints one JSON document, with a line end.

@@ -41,10 +41,7 @@ impl Progress {
             (false, true) => Show::Bar,
             (false, false) => Show::Lines,
         };
-        Self {
-            show,
-            bar: OnceLock::new(),
-        }
+        Self { show, bar: OnceLock::new() }
     }
 
     /// Says that a stage begins.
@@ -66,8 +63,7 @@ impl Watch for Progress {
             );
             let bar =
                 ProgressBar::with_draw_target(Some(u64::from(realizations)), ProgressDrawTarget::stderr());
-            self.bar
-                .get_or_init(|| bar.with_style(style.unwrap_or_else(|_| ProgressStyle::default_bar())));
+            self.bar.get_or_init(|| bar.with_style(style.unwrap_or_else(|_| ProgressStyle::default_bar())));
         }
     }
 

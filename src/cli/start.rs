@@ -13,9 +13,7 @@ pub(super) fn run(folder: &Path, shared: &Shared) -> Result<(), Failure> {
     };
     let files = crate::demo::files();
     let differs = |path: &Path, content: &str| fs::read(path).is_ok_and(|there| there != content.as_bytes());
-    if let Some((name, _)) = files
-        .iter()
-        .find(|(name, content)| differs(&folder.join(name), content))
+    if let Some((name, _)) = files.iter().find(|(name, content)| differs(&folder.join(name), content))
         && !shared.force
     {
         return Err(Failure::FileSystem(format!(

@@ -100,11 +100,7 @@ fn in_pool<T: Send>(shared: &Shared, work: impl FnOnce() -> T + Send) -> Result<
 fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findings, Failure> {
     let scenario = &ready.scenario;
     let warming = &scenario.warming;
-    let changes: Vec<_> = warming
-        .levels_c
-        .iter()
-        .map(|level| warming.warming.at(*level))
-        .collect();
+    let changes: Vec<_> = warming.levels_c.iter().map(|level| warming.warming.at(*level)).collect();
     let lanes = ready.lanes(&changes);
     let generator = YearBlocks {
         record: &ready.weather,
@@ -144,16 +140,11 @@ fn describe<'a>(
     shared: &Shared,
 ) -> Result<Study<'a>, Failure> {
     let scenario = &ready.scenario;
-    let reference = scenario
-        .warming
-        .warming
-        .at(scenario.warming.levels_c[scenario.warming.reference]);
+    let reference = scenario.warming.warming.at(scenario.warming.levels_c[scenario.warming.reference]);
     let lanes = ready.lanes(&[reference]);
     let years =
         record_years(&lanes, measures, &ready.weather).map_err(|open| Failure::Ours(open.to_string()))?;
-    let seed = shared
-        .seed
-        .map_or(String::new(), |seed| format!(" --seed {seed}"));
+    let seed = shared.seed.map_or(String::new(), |seed| format!(" --seed {seed}"));
     let roles = ["scenario", "bands", "weather"];
     let inputs = roles.into_iter().zip(&ready.files).map(|(role, file)| Input {
         role,
@@ -178,11 +169,7 @@ fn describe<'a>(
             mean_precipitation_mm: ready.mean_precipitation_mm(),
         },
         findings,
-        defaults: ready
-            .defaults
-            .iter()
-            .map(|default| (default.key.clone(), default.value.clone()))
-            .collect(),
+        defaults: ready.defaults.iter().map(|default| (default.key.clone(), default.value.clone())).collect(),
         unlikely: &ready.unlikely,
         origin: Origin {
             command: format!("thawline study {}{seed}", path.display()),
@@ -194,32 +181,19 @@ fn describe<'a>(
 
 fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Failure> {
     let ours = |error: serde_json::Error| Failure::Ours(error.to_string());
-    let setting = Setting {
-        study_title: study.title,
-        water_year_starts: study.starts(),
-    };
+    let setting = Setting { study_title: study.title, water_year_starts: study.starts() };
     let mut files = Vec::new();
     let mut drawn = Vec::new();
     for figure in &FIGURES {
         if let Some(svg) = (figure.draw)(study.findings, &setting) {
-            files.push((
-                format!("figures/{}.svg", figure.slug),
-                svg.text.clone().into_bytes(),
-            ));
+            files.push((format!("figures/{}.svg", figure.slug), svg.text.clone().into_bytes()));
             drawn.push(svg);
         }
     }
     files.extend(tables(study));
     files.push(("briefing.html".to_owned(), briefing_html(study, answer, &drawn)));
-    files.push((
-        "summary.json".to_owned(),
-        summary_json(study, answer).map_err(ours)?,
-    ));
-    let names: Vec<&str> = files
-        .iter()
-        .map(|(name, _)| name.as_str())
-        .chain(["run.json"])
-        .collect();
+    files.push(("summary.json".to_owned(), summary_json(study, answer).map_err(ours)?));
+    let names: Vec<&str> = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
     let manifest = manifest_json(study, &names).map_err(ours)?;
     files.push(("run.json".to_owned(), manifest));
     Ok(files)
@@ -245,22 +219,11 @@ fn check_size(ready: &Ready, measures: usize, shared: &Shared) -> Result<(), Fai
     let fault = Fault::key(
         "realizations.count",
         realizations.count,
-        format!(
-            "a study whose single years take at most {} GB",
-            MOST_KEPT_BYTES / 1e9
-        ),
-        format!(
-            "these would take {:.0} GB: run fewer realizations, years or levels",
-            bytes / 1e9
-        ),
+        format!("a study whose single years take at most {} GB", MOST_KEPT_BYTES / 1e9),
+        format!("these would take {:.0} GB: run fewer realizations, years or levels", bytes / 1e9),
     );
     let file = &ready.files[0];
-    Err(input_failure(
-        &[fault],
-        &file.name,
-        &file.text,
-        shared.is_coloured(),
-    ))
+    Err(input_failure(&[fault], &file.name, &file.text, shared.is_coloured()))
 }
 
 fn unpublished(error: PublishError) -> Failure {

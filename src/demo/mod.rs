@@ -22,35 +22,17 @@ mod weather;
 /// ```
 pub fn files() -> Vec<(&'static str, String)> {
     vec![
-        (
-            "scenarios/alder-fork.toml",
-            include_str!("../../scenarios/alder-fork.toml").to_owned(),
-        ),
-        (
-            "scenarios/frostbell-creek.toml",
-            include_str!("../../scenarios/frostbell-creek.toml").to_owned(),
-        ),
-        (
-            "demo-data/alder-fork/README.md",
-            include_str!("../../demo-data/alder-fork/README.md").to_owned(),
-        ),
+        ("scenarios/alder-fork.toml", include_str!("../../scenarios/alder-fork.toml").to_owned()),
+        ("scenarios/frostbell-creek.toml", include_str!("../../scenarios/frostbell-creek.toml").to_owned()),
+        ("demo-data/alder-fork/README.md", include_str!("../../demo-data/alder-fork/README.md").to_owned()),
         ("demo-data/alder-fork/bands.csv", bands::table(&alder_fork::PLACE)),
-        (
-            "demo-data/alder-fork/weather.csv",
-            station::table(&alder_fork::PLACE),
-        ),
+        ("demo-data/alder-fork/weather.csv", station::table(&alder_fork::PLACE)),
         (
             "demo-data/frostbell-creek/README.md",
             include_str!("../../demo-data/frostbell-creek/README.md").to_owned(),
         ),
-        (
-            "demo-data/frostbell-creek/bands.csv",
-            bands::table(&frostbell_creek::PLACE),
-        ),
-        (
-            "demo-data/frostbell-creek/weather.csv",
-            station::table(&frostbell_creek::PLACE),
-        ),
+        ("demo-data/frostbell-creek/bands.csv", bands::table(&frostbell_creek::PLACE)),
+        ("demo-data/frostbell-creek/weather.csv", station::table(&frostbell_creek::PLACE)),
     ]
 }
 

@@ -34,25 +34,15 @@ fn write_day(text: &mut String, day: &Day, gaps: &[Gap]) {
             holes.contains(&gap.hole) && (0..gap.days).contains(&age)
         })
     };
-    let tmin = cell(
-        day.tmin_c,
-        is_lost(&[Hole::Minimum, Hole::Temperatures, Hole::All]),
-    );
-    let tmax = cell(
-        day.tmax_c,
-        is_lost(&[Hole::Maximum, Hole::Temperatures, Hole::All]),
-    );
+    let tmin = cell(day.tmin_c, is_lost(&[Hole::Minimum, Hole::Temperatures, Hole::All]));
+    let tmax = cell(day.tmax_c, is_lost(&[Hole::Maximum, Hole::Temperatures, Hole::All]));
     let precipitation = cell(day.precipitation_mm, is_lost(&[Hole::Precipitation, Hole::All]));
     let _ = writeln!(text, "{},{tmin},{tmax},{precipitation}", day.date);
 }
 
 /// One decimal, never `-0.0`.
 fn cell(value: f64, is_lost: bool) -> String {
-    if is_lost {
-        String::new()
-    } else {
-        format!("{:.1}", (value * 10.0).round() / 10.0 + 0.0)
-    }
+    if is_lost { String::new() } else { format!("{:.1}", (value * 10.0).round() / 10.0 + 0.0) }
 }
 
 /// The dates of the demo all exist; one that does not would show as the calendar's first day.

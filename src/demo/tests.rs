@@ -27,13 +27,7 @@ fn each_record_has_forty_years_of_which_one_is_left_out() {
         let skipped: Vec<i32> = record.skipped.iter().map(|year| year.water_year).collect();
         assert_eq!((record.series.years.len(), skipped), (39, vec![left_out]));
         assert_eq!(record.counts.crossed_temperature_days, 0);
-        assert!(
-            record
-                .series
-                .half_range_c
-                .iter()
-                .all(|half_range| *half_range > 0.0)
-        );
+        assert!(record.series.half_range_c.iter().all(|half_range| *half_range > 0.0));
         assert!(record.counts.interpolated_days > 0 && record.counts.dry_for_want_of_data_days > 0);
     }
 }
@@ -45,16 +39,9 @@ fn weather_looks_like_a_mountain_station() {
         let series = read_station(&station::table(place)).series;
         let yearly_mm = series.precipitation_mm.iter().sum::<f64>() / series.years.len() as f64;
         assert!((500.0..900.0).contains(&yearly_mm), "{yearly_mm} mm a year");
-        let wet_days = series
-            .precipitation_mm
-            .iter()
-            .filter(|amount| **amount > 0.0)
-            .count();
+        let wet_days = series.precipitation_mm.iter().filter(|amount| **amount > 0.0).count();
         let wet_share = wet_days as f64 / series.precipitation_mm.len() as f64;
-        assert!(
-            (0.25..0.4).contains(&wet_share),
-            "{wet_share} of the days are wet"
-        );
+        assert!((0.25..0.4).contains(&wet_share), "{wet_share} of the days are wet");
         let range_c = |is_wet: bool| {
             let days = series.half_range_c.iter().zip(&series.precipitation_mm);
             let ranges: Vec<f64> = days
@@ -68,17 +55,12 @@ fn weather_looks_like_a_mountain_station() {
 }
 
 fn read_station(text: &str) -> Record {
-    let celsius = |column: &str| TemperatureColumn {
-        column: column.to_owned(),
-        unit: TemperatureUnit::Celsius,
-    };
+    let celsius =
+        |column: &str| TemperatureColumn { column: column.to_owned(), unit: TemperatureUnit::Celsius };
     let columns = Columns {
         date: "date".to_owned(),
         date_format: "%Y-%m-%d".to_owned(),
-        temperature: TemperatureColumns::Extremes {
-            tmin: celsius("tmin_c"),
-            tmax: celsius("tmax_c"),
-        },
+        temperature: TemperatureColumns::Extremes { tmin: celsius("tmin_c"), tmax: celsius("tmax_c") },
         precipitation: PrecipitationColumn {
             column: "precip_mm".to_owned(),
             unit: DepthUnit::Millimetre,
@@ -88,13 +70,5 @@ fn read_station(text: &str) -> Record {
         missing: Vec::new(),
     };
     let day = |month, day| MonthDay::new(month, day).unwrap();
-    read(
-        "weather.csv",
-        text,
-        &columns,
-        WaterYearStart(day(10, 1)),
-        day(4, 1),
-        Limits::default(),
-    )
-    .unwrap()
+    read("weather.csv", text, &columns, WaterYearStart(day(10, 1)), day(4, 1), Limits::default()).unwrap()
 }

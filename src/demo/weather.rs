@@ -55,10 +55,7 @@ pub fn draw(climate: &Climate, first: NaiveDate, end: NaiveDate) -> Vec<Day> {
     let mut year_draws = stream(climate.seed, YEARS_STREAM);
     let mut day_draws = stream(climate.seed, DAYS_STREAM);
     let mut mood = first_mood(&climate.year_to_year, &mut year_draws);
-    let mut yesterday = Yesterday {
-        is_wet: false,
-        residual: 0.0,
-    };
+    let mut yesterday = Yesterday { is_wet: false, residual: 0.0 };
     let mut days = Vec::new();
     for date in first.iter_days().take_while(|date| *date < end) {
         if (date.month(), date.day()) == (10, 1) && date > first {
@@ -70,10 +67,7 @@ pub fn draw(climate: &Climate, first: NaiveDate, end: NaiveDate) -> Vec<Day> {
 }
 
 fn first_mood(years: &YearToYear, random: &mut ChaCha8Rng) -> YearMood {
-    YearMood {
-        wetness: normal(random),
-        warmth_c: years.warmth_sd_c * normal(random),
-    }
+    YearMood { wetness: normal(random), warmth_c: years.warmth_sd_c * normal(random) }
 }
 
 /// Wetness persists a little from year to year, a lag-1 autoregression of unit variance; warmth does not.
@@ -123,11 +117,7 @@ fn draw_day(
         date,
         tmin_c: mean_c - half_range_c,
         tmax_c: mean_c + half_range_c,
-        precipitation_mm: if is_wet {
-            amount_mm.max(SMALLEST_AMOUNT_MM)
-        } else {
-            0.0
-        },
+        precipitation_mm: if is_wet { amount_mm.max(SMALLEST_AMOUNT_MM) } else { 0.0 },
     }
 }
 

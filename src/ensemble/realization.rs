@@ -52,9 +52,7 @@ impl<'p> Workshop<'p> {
             self.columns = block.width;
             let size = self.plan.measures.list().len() * block.width;
             self.measured.resize(self.weather.years.len() * size, NONE);
-            self.plan
-                .measures
-                .take(block, &mut self.measured[year * size..(year + 1) * size]);
+            self.plan.measures.take(block, &mut self.measured[year * size..(year + 1) * size]);
         }
         Ok(self.keep())
     }

@@ -34,14 +34,8 @@ pub fn record_years(
         let width = block.width;
         taken.resize(measures.list().len() * width, 0.0);
         measures.take(block, &mut taken);
-        let values = taken
-            .chunks_exact(width)
-            .map(|row| row[lanes.first_mix_column()])
-            .collect();
-        years.push(RecordYear {
-            water_year: span.water_year,
-            values,
-        });
+        let values = taken.chunks_exact(width).map(|row| row[lanes.first_mix_column()]).collect();
+        years.push(RecordYear { water_year: span.water_year, values });
     }
     Ok(years)
 }

@@ -25,9 +25,7 @@ impl Seasons {
         let measures = plan.measures.list().to_vec();
         let (levels, bands, count) = (plan.levels, plan.bands, measures.len());
         let realizations = kept.len();
-        let years = kept
-            .first()
-            .map_or(0, |kept| kept.basin_years.len() / (levels * count));
+        let years = kept.first().map_or(0, |kept| kept.basin_years.len() / (levels * count));
         let mut seasons = Self {
             basin_years: Array4::zeros((levels, count, realizations, years)),
             basin_periods: Array3::zeros((levels, count, realizations)),
@@ -43,10 +41,7 @@ impl Seasons {
 
     fn put(&mut self, realization: usize, kept: &Kept) {
         let mut years = self.basin_years.index_axis_mut(Axis(2), realization);
-        years
-            .iter_mut()
-            .zip(&kept.basin_years)
-            .for_each(|(place, value)| *place = *value);
+        years.iter_mut().zip(&kept.basin_years).for_each(|(place, value)| *place = *value);
         let years = self.basin_years.index_axis(Axis(2), realization);
         let mut periods = self.basin_periods.index_axis_mut(Axis(2), realization);
         let mut one = Vec::new();
@@ -56,10 +51,7 @@ impl Seasons {
             *period = period_value(self.measures[at.1].kind, &mut one);
         }
         let mut bands = self.band_periods.index_axis_mut(Axis(3), realization);
-        bands
-            .iter_mut()
-            .zip(&kept.band_periods)
-            .for_each(|(place, value)| *place = *value);
+        bands.iter_mut().zip(&kept.band_periods).for_each(|(place, value)| *place = *value);
         for (sum, [none, not_gone]) in self.band_undefined.iter_mut().zip(&kept.band_undefined) {
             sum[0] += none;
             sum[1] += not_gone;

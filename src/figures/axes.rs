@@ -15,19 +15,14 @@ pub(super) struct AmountTicks {
 impl AmountTicks {
     /// Ticks up to the first that is not below `highest`, with at most `steps` steps.
     pub fn up_to(highest: f64, steps: usize) -> Self {
-        let highest = if highest.is_finite() && highest > 0.0 {
-            highest
-        } else {
-            1.0
-        };
+        let highest = if highest.is_finite() && highest > 0.0 { highest } else { 1.0 };
         let power = libm::floor(libm::log10(highest / steps as f64)) as i32;
         let (mantissa, power) = [(1, power), (2, power), (5, power), (10, power), (20, power)]
             .into_iter()
             .find(|(mantissa, power)| highest <= value(*mantissa * steps as i64, *power))
             .unwrap_or((50, power));
-        let count = (1..=steps)
-            .find(|count| value(mantissa * *count as i64, power) >= highest)
-            .unwrap_or(steps);
+        let count =
+            (1..=steps).find(|count| value(mantissa * *count as i64, power) >= highest).unwrap_or(steps);
         let step = value(mantissa, power);
         let decimals = (0..9)
             .find(|decimals| {
@@ -53,11 +48,7 @@ impl AmountTicks {
 /// `mantissa * 10^power` without the error of a repeated sum.
 fn value(mantissa: i64, power: i32) -> f64 {
     let ten = libm::pow(10.0, f64::from(power.abs()));
-    if power < 0 {
-        mantissa as f64 / ten
-    } else {
-        mantissa as f64 * ten
-    }
+    if power < 0 { mantissa as f64 / ten } else { mantissa as f64 * ten }
 }
 
 /// A part of the water year as a calendar.
@@ -91,10 +82,7 @@ impl Calendar {
     pub fn around(days: Range<f64>, least: f64, starts: WaterYearStart) -> Self {
         let span = days.end - days.start;
         let pad = ((least - span) / 2.0).max(0.04 * span);
-        Self {
-            starts,
-            days: days.start - pad..days.end + pad,
-        }
+        Self { starts, days: days.start - pad..days.end + pad }
     }
 
     /// The months that are shown, in order.
@@ -133,11 +121,7 @@ mod tests {
     use crate::calendar::MonthDay;
 
     fn labels(highest: f64) -> Vec<String> {
-        AmountTicks::up_to(highest, 6)
-            .ticks
-            .into_iter()
-            .map(|(_, label)| label)
-            .collect()
+        AmountTicks::up_to(highest, 6).ticks.into_iter().map(|(_, label)| label).collect()
     }
 
     #[test]
@@ -155,10 +139,7 @@ mod tests {
                 "12\u{2009}000"
             ]
         );
-        assert_eq!(
-            labels(0.3),
-            ["0.00", "0.05", "0.10", "0.15", "0.20", "0.25", "0.30"]
-        );
+        assert_eq!(labels(0.3), ["0.00", "0.05", "0.10", "0.15", "0.20", "0.25", "0.30"]);
         assert_eq!(labels(0.0), labels(1.0));
         assert_eq!(labels(f64::NAN), labels(1.0));
     }
@@ -176,10 +157,7 @@ mod tests {
     #[test]
     fn months_follow_the_water_year() {
         let october = WaterYearStart(MonthDay::new(10, 1).unwrap());
-        let calendar = Calendar {
-            starts: october,
-            days: 180.5..250.0,
-        };
+        let calendar = Calendar { starts: october, days: 180.5..250.0 };
         let months = calendar.months();
         let names: Vec<&str> = months.iter().map(|month| month.name).collect();
         assert_eq!(names, ["March", "April", "May", "June"]);

@@ -94,10 +94,8 @@ impl SvgBackend {
     }
 
     fn points(&mut self, points: impl IntoIterator<Item = BackendCoord>) {
-        let pairs: Vec<String> = points
-            .into_iter()
-            .map(|(x, y)| format!("{},{}", in_px(x), in_px(y)))
-            .collect();
+        let pairs: Vec<String> =
+            points.into_iter().map(|(x, y)| format!("{},{}", in_px(x), in_px(y))).collect();
         self.word("points", &pairs.join(" "));
     }
 
@@ -276,11 +274,7 @@ fn turned(transform: &FontTransform) -> Option<u32> {
 fn in_px(canvas_units: i32) -> String {
     let sign = if canvas_units < 0 { "-" } else { "" };
     let (pixels, tenths) = (canvas_units.unsigned_abs() / 10, canvas_units.unsigned_abs() % 10);
-    if tenths == 0 {
-        format!("{sign}{pixels}")
-    } else {
-        format!("{sign}{pixels}.{tenths}")
-    }
+    if tenths == 0 { format!("{sign}{pixels}") } else { format!("{sign}{pixels}.{tenths}") }
 }
 
 /// Appends text with the characters that XML keeps for itself written as entities, and those it forbids left out.
@@ -322,15 +316,7 @@ mod tests {
         let mut svg = SvgBackend::new(10.0, 10.0);
         svg.set_dash(Some([4, 3]));
         svg.set_class(Some("edge"));
-        svg.draw_line(
-            (0, 5),
-            (100, 5),
-            &BackendColor {
-                alpha: 1.0,
-                rgb: (1, 2, 255),
-            },
-        )
-        .unwrap();
+        svg.draw_line((0, 5), (100, 5), &BackendColor { alpha: 1.0, rgb: (1, 2, 255) }).unwrap();
         assert_eq!(
             svg.body(),
             "<line class=\"edge\" x1=\"0\" y1=\"0.5\" x2=\"10\" y2=\"0.5\" fill=\"none\" stroke=\"#0102ff\" \

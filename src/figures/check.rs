@@ -17,11 +17,7 @@ fn texts(svg: &str) -> Vec<Lettered> {
 fn lettered(element: &str) -> Lettered {
     let (attributes, rest) = element.split_once('>').unwrap();
     let words = rest.split_once("</text>").unwrap().0;
-    let words = words
-        .replace("&lt;", "<")
-        .replace("&gt;", ">")
-        .replace("&quot;", "\"")
-        .replace("&amp;", "&");
+    let words = words.replace("&lt;", "<").replace("&gt;", ">").replace("&quot;", "\"").replace("&amp;", "&");
     let attribute = |name: &str| {
         let (_, after) = attributes.split_once(&format!(" {name}=\""))?;
         after.split_once('"').map(|(value, _)| value)
@@ -35,15 +31,7 @@ fn lettered(element: &str) -> Lettered {
             Some("end") => width,
             _ => 0.0,
         };
-    (
-        [
-            left,
-            number("y") - 0.72 * size,
-            left + width,
-            number("y") + 0.22 * size,
-        ],
-        words,
-    )
+    ([left, number("y") - 0.72 * size, left + width, number("y") + 0.22 * size], words)
 }
 
 fn view_box(svg: &str) -> [f64; 2] {
@@ -99,44 +87,22 @@ fn a_title_with_the_characters_of_xml_stays_text() {
 
 #[test]
 fn titles_turn_round_when_the_numbers_do() {
-    let titles = |study: &Study<'_>| {
-        study
-            .draw("Alder Fork", 10)
-            .into_iter()
-            .map(|svg| svg.title)
-            .collect::<Vec<_>>()
-    };
+    let titles =
+        |study: &Study<'_>| study.draw("Alder Fork", 10).into_iter().map(|svg| svg.title).collect::<Vec<_>>();
     let falling = titles(&PLAIN);
-    assert!(
-        falling[0].starts_with("1 April SWE is 120 mm (28 %) lower at +2 °C; from +1."),
-        "{falling:?}"
-    );
-    assert!(
-        falling[0].ends_with("on, the shift outweighs the precipitation spread"),
-        "{falling:?}"
-    );
+    assert!(falling[0].starts_with("1 April SWE is 120 mm (28 %) lower at +2 °C; from +1."), "{falling:?}");
+    assert!(falling[0].ends_with("on, the shift outweighs the precipitation spread"), "{falling:?}");
     assert!(
         falling[1].starts_with("Half of the melt comes 12 days and melt-out 8 days earlier at +2 °C"),
         "{falling:?}"
     );
-    let rising = titles(&Study {
-        swe: [430.0, 90.0, 60.0],
-        dates: [220.0, 9.0, 6.0],
-        ..PLAIN
-    });
-    assert!(
-        rising[0].starts_with("1 April SWE is 120 mm (28 %) higher at +2 °C"),
-        "{rising:?}"
-    );
+    let rising = titles(&Study { swe: [430.0, 90.0, 60.0], dates: [220.0, 9.0, 6.0], ..PLAIN });
+    assert!(rising[0].starts_with("1 April SWE is 120 mm (28 %) higher at +2 °C"), "{rising:?}");
     assert!(
         rising[1].starts_with("Half of the melt comes 12 days and melt-out 8 days later at +2 °C"),
         "{rising:?}"
     );
-    let cold = titles(&Study {
-        swe: [610.0, 140.0, -9.0],
-        dates: [250.0, 12.0, -1.0],
-        ..PLAIN
-    });
+    let cold = titles(&Study { swe: [610.0, 140.0, -9.0], dates: [250.0, 12.0, -1.0], ..PLAIN });
     assert_eq!(
         cold[0],
         "1 April SWE is 36 mm (5.9 %) lower at +4 °C; up to +4 °C, the shift does not outweigh the precipitation spread"
@@ -148,18 +114,9 @@ fn titles_turn_round_when_the_numbers_do() {
 fn each_figure_is_named_for_readers_who_do_not_see_it() {
     for (figure, svg) in FIGURES.iter().zip(PLAIN.draw("Alder Fork", 10)) {
         let slug = figure.slug;
-        assert!(svg.text.contains(&format!(
-            "role=\"img\" aria-labelledby=\"{slug}-title {slug}-desc\""
-        )));
-        assert!(
-            svg.text
-                .contains(&format!("<title id=\"{slug}-title\">{}</title>", svg.title))
-        );
-        for said in [
-            "60 realizations of 30 years",
-            "5–95 %",
-            "not day-to-day variation",
-        ] {
+        assert!(svg.text.contains(&format!("role=\"img\" aria-labelledby=\"{slug}-title {slug}-desc\"")));
+        assert!(svg.text.contains(&format!("<title id=\"{slug}-title\">{}</title>", svg.title)));
+        for said in ["60 realizations of 30 years", "5–95 %", "not day-to-day variation"] {
             assert!(svg.caption.contains(said), "{slug}: {said}");
         }
         assert!(svg.alt.starts_with(&svg.title));
@@ -172,28 +129,14 @@ fn figures_without_their_measures_are_not_drawn() {
         study_title: "Alder Fork",
         water_year_starts: WaterYearStart(MonthDay::new(10, 1).unwrap()),
     };
-    let findings = Findings {
-        basin: Vec::new(),
-        ..PLAIN.findings()
-    };
-    assert!(
-        FIGURES
-            .iter()
-            .all(|figure| (figure.draw)(&findings, &setting).is_none())
-    );
+    let findings = Findings { basin: Vec::new(), ..PLAIN.findings() };
+    assert!(FIGURES.iter().all(|figure| (figure.draw)(&findings, &setting).is_none()));
 }
 
 #[test]
 fn snow_that_never_goes_is_counted_in_its_row() {
-    let figures = Study {
-        undefined: [5, 0],
-        ..PLAIN
-    }
-    .draw("Alder Fork", 10);
+    let figures = Study { undefined: [5, 0], ..PLAIN }.draw("Alder Fork", 10);
     let said = texts(&figures[1].text);
-    let count = said
-        .iter()
-        .filter(|(_, words)| words == "snow not gone in 5 of 60 realizations")
-        .count();
+    let count = said.iter().filter(|(_, words)| words == "snow not gone in 5 of 60 realizations").count();
     assert_eq!(count, 2 * PLAIN.levels_c.len());
 }

@@ -7,48 +7,28 @@ use plotters::style::RGBColor;
 type Triple = [f64; 3];
 
 const SIGHTS: [(&str, f64, [Triple; 3]); 4] = [
-    (
-        "normal",
-        20.0,
-        [[1.0, 0.0, 0.0], [0.0, 1.0, 0.0], [0.0, 0.0, 1.0]],
-    ),
+    ("normal", 20.0, [[1.0, 0.0, 0.0], [0.0, 1.0, 0.0], [0.0, 0.0, 1.0]]),
     (
         "protan",
         11.0,
-        [
-            [0.152286, 1.052583, -0.204868],
-            [0.114503, 0.786281, 0.099216],
-            [-0.003882, -0.048116, 1.051998],
-        ],
+        [[0.152286, 1.052583, -0.204868], [0.114503, 0.786281, 0.099216], [-0.003882, -0.048116, 1.051998]],
     ),
     (
         "deutan",
         11.0,
-        [
-            [0.367322, 0.860646, -0.227968],
-            [0.280085, 0.672501, 0.047413],
-            [-0.011820, 0.042940, 0.968881],
-        ],
+        [[0.367322, 0.860646, -0.227968], [0.280085, 0.672501, 0.047413], [-0.011820, 0.042940, 0.968881]],
     ),
     (
         "tritan",
         11.0,
-        [
-            [1.255528, -0.076749, -0.178779],
-            [-0.078411, 0.930809, 0.147602],
-            [0.004733, 0.691367, 0.303900],
-        ],
+        [[1.255528, -0.076749, -0.178779], [-0.078411, 0.930809, 0.147602], [0.004733, 0.691367, 0.303900]],
     ),
 ];
 
 fn linear(colour: RGBColor) -> Triple {
     [colour.0, colour.1, colour.2].map(|channel| {
         let c = f64::from(channel) / 255.0;
-        if c <= 0.04045 {
-            c / 12.92
-        } else {
-            libm::pow((c + 0.055) / 1.055, 2.4)
-        }
+        if c <= 0.04045 { c / 12.92 } else { libm::pow((c + 0.055) / 1.055, 2.4) }
     })
 }
 
@@ -70,13 +50,8 @@ fn lab(colour: RGBColor, sight: &[Triple; 3]) -> Triple {
     let x = dot([0.4124564, 0.3575761, 0.1804375], seen) / 0.95047;
     let y = dot([0.2126729, 0.7151522, 0.0721750], seen);
     let z = dot([0.0193339, 0.1191920, 0.9503041], seen) / 1.08883;
-    let [x, y, z] = [x, y, z].map(|t| {
-        if t > 216.0 / 24389.0 {
-            libm::cbrt(t)
-        } else {
-            (24389.0 / 27.0 * t + 16.0) / 116.0
-        }
-    });
+    let [x, y, z] = [x, y, z]
+        .map(|t| if t > 216.0 / 24389.0 { libm::cbrt(t) } else { (24389.0 / 27.0 * t + 16.0) / 116.0 });
     [116.0 * y - 16.0, 500.0 * (x - y), 200.0 * (y - z)]
 }
 
@@ -141,9 +116,8 @@ fn text_and_lines_stand_out_from_paper_and_band() {
 fn levels_are_told_apart_by_every_sight() {
     for levels in 2..=5 {
         for (name, least, sight) in &SIGHTS {
-            let seen: Vec<Triple> = (0..levels)
-                .map(|level| lab(level_ink(level, 0, levels), sight))
-                .collect();
+            let seen: Vec<Triple> =
+                (0..levels).map(|level| lab(level_ink(level, 0, levels), sight)).collect();
             for (at, one) in seen.iter().enumerate() {
                 for other in &seen[..at] {
                     let apart = difference(*one, *other);
@@ -158,9 +132,8 @@ fn levels_are_told_apart_by_every_sight() {
 #[test]
 fn warmer_is_darker_so_that_grey_keeps_the_order() {
     for levels in 3..=9 {
-        let light: Vec<f64> = (1..levels)
-            .map(|level| lab(level_ink(level, 0, levels), &SIGHTS[0].2)[0])
-            .collect();
+        let light: Vec<f64> =
+            (1..levels).map(|level| lab(level_ink(level, 0, levels), &SIGHTS[0].2)[0]).collect();
         assert!(light.is_sorted_by(|a, b| a > b), "{light:?}");
     }
 }

@@ -23,15 +23,12 @@ pub(super) fn of_amount(findings: &Findings, measure: &MeasureFindings) -> Strin
     let title = sentence(&measure.measure.title);
     let spoken = spoken_of(findings, measure).and_then(|at| measure.levels.get(at));
     let Some(spoken) = spoken else {
-        let median = measure
-            .levels
-            .get(findings.reference)
-            .and_then(|reference| reference.periods.q50.value());
+        let median =
+            measure.levels.get(findings.reference).and_then(|reference| reference.periods.q50.value());
         return match median {
-            Some(median) => format!(
-                "{title} is {} mm at the reference; no other level was run",
-                size(median)
-            ),
+            Some(median) => {
+                format!("{title} is {} mm at the reference; no other level was run", size(median))
+            }
             None => format!("{title} has no value at the reference; no other level was run"),
         };
     };
@@ -40,17 +37,10 @@ pub(super) fn of_amount(findings: &Findings, measure: &MeasureFindings) -> Strin
         (None, _) => format!("{title} has no value to compare at {place}"),
         (Some(shift), _) if is_nothing(shift.median.value) => format!("{title} is unchanged at {place}"),
         (Some(shift), percent) => {
-            let direction = if shift.median.value < 0.0 {
-                "lower"
-            } else {
-                "higher"
-            };
+            let direction = if shift.median.value < 0.0 { "lower" } else { "higher" };
             let percent =
                 percent.map_or_else(String::new, |percent| format!(" ({} %)", percent_size(percent)));
-            format!(
-                "{title} is {} mm{percent} {direction} at {place}",
-                size(shift.median.value)
-            )
+            format!("{title} is {} mm{percent} {direction} at {place}", size(shift.median.value))
         }
     };
     format!("{what}; {}", against_spread(findings, measure, "the shift"))
@@ -71,11 +61,7 @@ pub(super) fn of_dates(
         };
         return Some(match date(leading) {
             Some(date) => {
-                let subject = if half.is_some() {
-                    "Half of the melt comes"
-                } else {
-                    "Melt-out comes"
-                };
+                let subject = if half.is_some() { "Half of the melt comes" } else { "Melt-out comes" };
                 format!("{subject} on {date} at the reference; no other level was run")
             }
             None => "Melt has no date at the reference; no other level was run".to_owned(),
@@ -96,15 +82,8 @@ pub(super) fn of_dates(
         (None, Some(out)) => format!("Melt-out comes {}", days_in_words(out)),
         (None, None) => "The median realization has no melt dates to compare".to_owned(),
     };
-    let subject = if half.is_some() {
-        "the shift of half the melt"
-    } else {
-        "the shift"
-    };
-    Some(format!(
-        "{what} at {place}; {}",
-        against_spread(findings, leading, subject)
-    ))
+    let subject = if half.is_some() { "the shift of half the melt" } else { "the shift" };
+    Some(format!("{what} at {place}; {}", against_spread(findings, leading, subject)))
 }
 
 /// Both shifts, the direction once where it is the same.
@@ -123,14 +102,12 @@ fn both_in_words(half: f64, out: f64) -> String {
 
 fn against_spread(findings: &Findings, measure: &MeasureFindings, subject: &str) -> String {
     match measure.outweighs {
-        Crossing::At { level_c } => format!(
-            "from {} on, {subject} outweighs the precipitation spread",
-            between_levels(level_c)
-        ),
-        Crossing::NotReached { up_to_c } => format!(
-            "up to {}, {subject} does not outweigh the precipitation spread",
-            level(up_to_c)
-        ),
+        Crossing::At { level_c } => {
+            format!("from {} on, {subject} outweighs the precipitation spread", between_levels(level_c))
+        }
+        Crossing::NotReached { up_to_c } => {
+            format!("up to {}, {subject} does not outweigh the precipitation spread", level(up_to_c))
+        }
         Crossing::Unknown if findings.reference + 1 == measure.levels.len() => {
             "no warmer level was run".to_owned()
         }

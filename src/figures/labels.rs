@@ -23,21 +23,13 @@ pub(super) fn is_nothing(amount: f64) -> bool {
 
 /// `+12`, `−112`, `0`.
 pub(super) fn signed(amount: f64) -> String {
-    if is_nothing(amount) {
-        "0".to_owned()
-    } else {
-        format!("{}{}", sign(amount), size(amount))
-    }
+    if is_nothing(amount) { "0".to_owned() } else { format!("{}{}", sign(amount), size(amount)) }
 }
 
 /// `−27 %`, `+2.3 %`.
 pub(super) fn signed_percent(percent: f64) -> String {
     let text = percent_size(percent);
-    if text == "0" {
-        "0 %".to_owned()
-    } else {
-        format!("{}{text} %", sign(percent))
-    }
+    if text == "0" { "0 %".to_owned() } else { format!("{}{text} %", sign(percent)) }
 }
 
 /// `27`, `2.3`, `0`: a percentage without its sign.
@@ -53,11 +45,7 @@ pub(super) fn percent_size(percent: f64) -> String {
 pub(super) fn level(level_c: f64) -> String {
     let text = grouped(level_c.abs(), 2);
     let text = text.trim_end_matches('0').trim_end_matches('.');
-    if text.is_empty() || text == "0" {
-        "0 °C".to_owned()
-    } else {
-        format!("{}{text} °C", sign(level_c))
-    }
+    if text.is_empty() || text == "0" { "0 °C".to_owned() } else { format!("{}{text} °C", sign(level_c)) }
 }
 
 /// `+1.4 °C`: a warming between levels, to a tenth.
@@ -109,9 +97,7 @@ pub(super) fn day_of_month(starts: WaterYearStart, day: f64) -> String {
 /// The text with a capital at its beginning.
 pub(super) fn sentence(text: &str) -> String {
     let mut chars = text.chars();
-    chars
-        .next()
-        .map_or_else(String::new, |first| first.to_uppercase().chain(chars).collect())
+    chars.next().map_or_else(String::new, |first| first.to_uppercase().chain(chars).collect())
 }
 
 /// A number that is not negative, with thin spaces between thousands.
@@ -144,16 +130,10 @@ mod tests {
     #[test]
     fn amounts_are_rounded_to_what_a_reader_can_use() {
         let written = [12_000.4, 112.4, 9.96, 9.94, 1.04, 0.996, 0.3, 0.0].map(size);
-        assert_eq!(
-            written,
-            ["12\u{2009}000", "112", "10", "9.9", "1.0", "1.0", "0.30", "0"]
-        );
+        assert_eq!(written, ["12\u{2009}000", "112", "10", "9.9", "1.0", "1.0", "0.30", "0"]);
         assert_eq!(signed(-112.4), "−112");
         assert_eq!(signed(-0.001), "0");
-        assert_eq!(
-            [-26.6, 2.31, -0.01].map(signed_percent),
-            ["−27 %", "+2.3 %", "0 %"]
-        );
+        assert_eq!([-26.6, 2.31, -0.01].map(signed_percent), ["−27 %", "+2.3 %", "0 %"]);
     }
 
     #[test]
@@ -173,9 +153,6 @@ mod tests {
         assert_eq!(day_of_month(starts(4), 183.4), "30 September");
         assert_eq!(day_of_month(starts(1), 60.0), "1 March");
         assert_eq!(day_of_month(starts(10), -1.0), "29 September");
-        assert_eq!(
-            [-11.6, 3.2, 0.3].map(days),
-            ["12 d earlier", "3 d later", "same day"]
-        );
+        assert_eq!([-11.6, 3.2, 0.3].map(days), ["12 d earlier", "3 d later", "same day"]);
     }
 }

@@ -80,10 +80,7 @@ impl DotSize {
         let [largest, smallest] = DOT_PX;
         let mut radius = largest;
         loop {
-            let size = Self {
-                radius,
-                apart: 2.0 * radius + 0.6,
-            };
+            let size = Self { radius, apart: 2.0 * radius + 0.6 };
             if radius <= smallest || sets.iter().all(|heights| size.width(heights) <= room_px) {
                 return size;
             }
@@ -93,10 +90,7 @@ impl DotSize {
 
     /// Width of the widest set, px.
     pub fn widest(&self, sets: &[Vec<f64>], room_px: f64) -> f64 {
-        sets.iter()
-            .map(|heights| self.width(heights))
-            .fold(0.0, f64::max)
-            .min(room_px)
+        sets.iter().map(|heights| self.width(heights)).fold(0.0, f64::max).min(room_px)
     }
 
     fn width(&self, heights: &[f64]) -> f64 {
@@ -114,10 +108,7 @@ impl DotSize {
         } else {
             (room_px - 2.0 * self.radius).max(0.0) / last_column(&columns)
         };
-        columns
-            .into_iter()
-            .map(|column| self.radius + column as f64 * step)
-            .collect()
+        columns.into_iter().map(|column| self.radius + column as f64 * step).collect()
     }
 }
 
@@ -175,10 +166,7 @@ mod tests {
         for (at, (x, y)) in across.iter().zip(&heights).enumerate() {
             assert!(x + size.radius <= 40.0);
             for (other_x, other_y) in across[..at].iter().zip(&heights) {
-                assert!(
-                    libm::hypot(x - other_x, y - other_y) >= 2.0 * size.radius,
-                    "dot {at}"
-                );
+                assert!(libm::hypot(x - other_x, y - other_y) >= 2.0 * size.radius, "dot {at}");
             }
         }
     }

@@ -15,11 +15,8 @@ use panel::{Area, Panel};
 use words::Words;
 
 /// The figure.
-pub(super) const FIGURE: Figure = Figure {
-    slug: "melt-timing",
-    question: "How much earlier does the snow melt as the basin warms?",
-    draw,
-};
+pub(super) const FIGURE: Figure =
+    Figure { slug: "melt-timing", question: "How much earlier does the snow melt as the basin warms?", draw };
 
 /// Least span of the calendar, days.
 const LEAST_DAYS: f64 = 40.0;
@@ -30,10 +27,8 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let find = |name| findings.basin.iter().find(|found| found.measure.name == name);
     let (half, out) = (find("melt_d50_day"), find("melt_out_day"));
     let title = headline::of_dates(findings, half, out, setting.water_year_starts)?;
-    let shown: Vec<(&MeasureFindings, Form)> = [half.zip(Some(Form::Round)), out.zip(Some(Form::Diamond))]
-        .into_iter()
-        .flatten()
-        .collect();
+    let shown: Vec<(&MeasureFindings, Form)> =
+        [half.zip(Some(Form::Round)), out.zip(Some(Form::Diamond))].into_iter().flatten().collect();
     let measures: Vec<&MeasureFindings> = shown.iter().map(|(measure, _)| *measure).collect();
     let words = Words::of(findings, &measures, setting.water_year_starts);
     let panels: Vec<Panel<'_>> = shown
@@ -41,12 +36,7 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
         .map(|(measure, form)| Panel::new(findings, measure, form, setting.water_year_starts))
         .collect();
     let text = paint(findings, &panels, setting, &title, &words).ok()?;
-    Some(Svg {
-        text,
-        alt: format!("{title}. {}", words.kind_of_drawing),
-        caption: words.caption,
-        title,
-    })
+    Some(Svg { text, alt: format!("{title}. {}", words.kind_of_drawing), caption: words.caption, title })
 }
 
 fn paint(
@@ -72,17 +62,10 @@ fn paint(
     heading.write(&sheet, MARGIN_PX)?;
     let mut panel_top = top;
     for panel in panels {
-        let area = Area {
-            plot: &plot,
-            top: panel_top,
-            left,
-            right,
-        };
+        let area = Area { plot: &plot, top: panel_top, left, right };
         sheet.group("measure", || panel.draw(&sheet, &area, findings))?;
         panel_top += panel.height();
-        sheet.group("axis", || {
-            calendar_axis(&sheet, &calendar, &plot, [left, right], panel_top)
-        })?;
+        sheet.group("axis", || calendar_axis(&sheet, &calendar, &plot, [left, right], panel_top))?;
         panel_top += AXIS_PX;
     }
     let note = if is_roomy(&calendar, &plot) {
@@ -111,19 +94,13 @@ fn calendar_axis(sheet: &Sheet, calendar: &Calendar, plot: &Plot, [left, right]:
     let months = calendar.months();
     let fits =
         |month: &Month, name: &str| LABEL.width(name) + 8.0 <= x_of(month.days.end) - x_of(month.days.start);
-    let are_long = months
-        .iter()
-        .any(|month| month.is_whole() && !fits(month, month.name));
+    let are_long = months.iter().any(|month| month.is_whole() && !fits(month, month.name));
     for month in &months {
         let from = x_of(month.days.start);
         if month.begins {
             sheet.line(&[(from, y), (from, y + 9.0)], line)?;
         }
-        let name = if are_long {
-            month.name.get(..3).unwrap_or(month.name)
-        } else {
-            month.name
-        };
+        let name = if are_long { month.name.get(..3).unwrap_or(month.name) } else { month.name };
         if fits(month, name) {
             let middle = (from + x_of(month.days.end)) / 2.0;
             sheet.write(name, (middle, y + 10.0), LABEL, HPos::Center, VPos::Top)?;

@@ -19,11 +19,7 @@ impl Paragraphs {
     /// Study, finding and ensemble.
     pub fn heading(study: &str, finding: &str, ensemble: &str) -> Self {
         let study = at_most(broken(study, NOTE), STUDY_LINES);
-        Self::of([
-            (study, NOTE),
-            (broken(finding, TITLE), TITLE),
-            (broken(ensemble, NOTE), NOTE),
-        ])
+        Self::of([(study, NOTE), (broken(finding, TITLE), TITLE), (broken(ensemble, NOTE), NOTE)])
     }
 
     /// How to read the marks.
@@ -56,10 +52,7 @@ impl Paragraphs {
                 lines.push((line, lettering, below - 0.3 * lettering.size_px));
             }
         }
-        Self {
-            lines,
-            height_px: below,
-        }
+        Self { lines, height_px: below }
     }
 }
 

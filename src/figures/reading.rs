@@ -31,11 +31,7 @@ impl Reading {
 
     /// `300 realizations of 30 years; precipitation spread with its own temperatures`.
     pub fn ensemble(&self, findings: &Findings) -> String {
-        let spread = if self.with_band {
-            "; precipitation spread with its own temperatures"
-        } else {
-            ""
-        };
+        let spread = if self.with_band { "; precipitation spread with its own temperatures" } else { "" };
         format!("{}{spread}", ensemble(findings))
     }
 
@@ -44,11 +40,7 @@ impl Reading {
         if self.realizations == 1 {
             return "Marker: the one realization. How far chance would move it is not known.".to_owned();
         }
-        let dots = if self.with_dots {
-            "Each dot: 1 in 20 realizations. "
-        } else {
-            ""
-        };
+        let dots = if self.with_dots { "Each dot: 1 in 20 realizations. " } else { "" };
         let spread = if self.with_band {
             format!(
                 "The spread: from the reference median (dashed) to the edge of the grey band that the {} points to; the \
@@ -73,11 +65,7 @@ impl Reading {
                     not day-to-day variation."
                 .to_owned();
         }
-        let dots = if self.with_dots {
-            "Each dot stands for 1 in 20 of them. "
-        } else {
-            ""
-        };
+        let dots = if self.with_dots { "Each dot stands for 1 in 20 of them. " } else { "" };
         let band = if self.with_band {
             format!(
                 "The grey band holds 5–95 % of the realizations at the reference: the precipitation spread with its own \

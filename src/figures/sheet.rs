@@ -34,11 +34,7 @@ pub(super) struct Stroke {
 impl Stroke {
     /// An unbroken line.
     pub const fn solid(ink: RGBColor, width_px: f64) -> Self {
-        Self {
-            ink,
-            width_px,
-            dash_px: None,
-        }
+        Self { ink, width_px, dash_px: None }
     }
 
     fn style(&self) -> ShapeStyle {
@@ -63,11 +59,7 @@ impl Sheet {
     pub fn new(height_px: f64) -> Drawn<Self> {
         let height_px = height_px.ceil();
         let backend = Rc::new(RefCell::new(SvgBackend::new(WIDTH_PX, height_px)));
-        let sheet = Self {
-            area: (&backend).into(),
-            backend,
-            height_px,
-        };
+        let sheet = Self { area: (&backend).into(), backend, height_px };
         sheet.classed("paper", || sheet.block((0.0, 0.0), (WIDTH_PX, height_px), PAPER))?;
         Ok(sheet)
     }
@@ -80,9 +72,7 @@ impl Sheet {
             .margin_right(fine(WIDTH_PX - right_bottom.0))
             .margin_bottom(fine(self.height_px - right_bottom.1))
             .build_cartesian_2d(x, y)?;
-        Ok(Plot {
-            area: chart.plotting_area().clone(),
-        })
+        Ok(Plot { area: chart.plotting_area().clone() })
     }
 
     /// Draws into a group with a class.
@@ -95,22 +85,10 @@ impl Sheet {
 
     /// A line of text; its place is that of the anchor.
     pub fn write(&self, text: &str, place: Px, lettering: Lettering, across: HPos, down: VPos) -> Drawn {
-        let weight = if lettering.is_bold {
-            FontStyle::Bold
-        } else {
-            FontStyle::Normal
-        };
-        let font = FontDesc::new(
-            FontFamily::Name(FONTS),
-            f64::from(fine(lettering.size_px)),
-            weight,
-        );
-        let style = TextStyle::from(font)
-            .color(&lettering.ink)
-            .pos(Pos::new(across, down));
-        self.classed(lettering.class, || {
-            self.area.draw(&Text::new(text, at(place), style))
-        })
+        let weight = if lettering.is_bold { FontStyle::Bold } else { FontStyle::Normal };
+        let font = FontDesc::new(FontFamily::Name(FONTS), f64::from(fine(lettering.size_px)), weight);
+        let style = TextStyle::from(font).color(&lettering.ink).pos(Pos::new(across, down));
+        self.classed(lettering.class, || self.area.draw(&Text::new(text, at(place), style)))
     }
 
     /// A line through places.
@@ -124,8 +102,7 @@ impl Sheet {
 
     /// A filled rectangle.
     pub fn block(&self, left_top: Px, right_bottom: Px, ink: RGBColor) -> Drawn {
-        self.area
-            .draw(&Rectangle::new([at(left_top), at(right_bottom)], ink.filled()))
+        self.area.draw(&Rectangle::new([at(left_top), at(right_bottom)], ink.filled()))
     }
 
     /// A filled shape.
@@ -136,14 +113,12 @@ impl Sheet {
 
     /// A filled circle.
     pub fn dot(&self, centre: Px, radius_px: f64, ink: RGBColor) -> Drawn {
-        self.area
-            .draw(&Circle::new(at(centre), fine(radius_px), ink.filled()))
+        self.area.draw(&Circle::new(at(centre), fine(radius_px), ink.filled()))
     }
 
     /// A circle's line.
     pub fn ring(&self, centre: Px, radius_px: f64, stroke: Stroke) -> Drawn {
-        self.area
-            .draw(&Circle::new(at(centre), fine(radius_px), stroke.style()))
+        self.area.draw(&Circle::new(at(centre), fine(radius_px), stroke.style()))
     }
 
     /// The whole document. `title` and `description` are what a screen reader says.

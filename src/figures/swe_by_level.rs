@@ -32,12 +32,7 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let title = headline::of_amount(findings, measure);
     let words = Words::of(findings, measure);
     let text = paint(findings, measure, setting, &title, &words).ok()?;
-    Some(Svg {
-        text,
-        alt: format!("{title}. {}", words.kind_of_drawing),
-        caption: words.caption,
-        title,
-    })
+    Some(Svg { text, alt: format!("{title}. {}", words.kind_of_drawing), caption: words.caption, title })
 }
 
 fn paint(
@@ -50,11 +45,7 @@ fn paint(
     let heading = Paragraphs::heading(setting.study_title, title, &words.ensemble);
     let key = Paragraphs::key(&words.key);
     let ticks = AmountTicks::up_to(highest(measure), STEPS);
-    let tick_width = ticks
-        .ticks
-        .iter()
-        .map(|(_, label)| LABEL.width(label))
-        .fold(0.0, f64::max);
+    let tick_width = ticks.ticks.iter().map(|(_, label)| LABEL.width(label)).fold(0.0, f64::max);
     let left = MARGIN_PX + tick_width + 14.0;
     let right = WIDTH_PX - MARGIN_PX - BAND_LABEL_PX;
     let columns = Columns::new(&findings.levels_c, left, right);
@@ -110,18 +101,9 @@ fn band(sheet: &Sheet, plot: &Plot, spread: &Spread, [left, right]: [f64; 2]) ->
     for edge in [low, high] {
         sheet.line(&[(left, edge), (right, edge)], Stroke::solid(EDGE, 1.0))?;
     }
-    let median = Stroke {
-        ink: INK,
-        width_px: 1.2,
-        dash_px: Some([6, 4]),
-    };
+    let median = Stroke { ink: INK, width_px: 1.2, dash_px: Some([6, 4]) };
     sheet.line(&[(left, middle), (right, middle)], median)?;
-    let bracket = [
-        (right + 4.0, high),
-        (right + 9.0, high),
-        (right + 9.0, low),
-        (right + 4.0, low),
-    ];
+    let bracket = [(right + 4.0, high), (right + 9.0, high), (right + 9.0, low), (right + 4.0, low)];
     sheet.line(&bracket, Stroke::solid(EDGE, 1.0))?;
     let lines = words::of_band(spread);
     let floor = plot.at(0.0, 0.0).1;
@@ -152,9 +134,7 @@ fn axis(sheet: &Sheet, plot: &Plot, ticks: &AmountTicks, name: &str, [left, righ
 fn dot_heights(measure: &MeasureFindings, plot: &Plot) -> Vec<Vec<f64>> {
     let heights = |level: &LevelFindings| {
         let dots = level.periods.dots.iter().filter(|_| level.periods.count >= DOTS);
-        dots.filter_map(|dot| dot.value())
-            .map(|amount| plot.at(0.0, amount).1)
-            .collect()
+        dots.filter_map(|dot| dot.value()).map(|amount| plot.at(0.0, amount).1).collect()
     };
     measure.levels.iter().map(heights).collect()
 }

@@ -58,11 +58,7 @@ pub(super) fn wrap(text: &str, width_px: f64, size_px: f64, is_bold: bool) -> Ve
     let mut lines: Vec<String> = Vec::new();
     let mut line = String::new();
     for chunk in chunks(text) {
-        let longer = if line.is_empty() {
-            chunk.clone()
-        } else {
-            format!("{line} {chunk}")
-        };
+        let longer = if line.is_empty() { chunk.clone() } else { format!("{line} {chunk}") };
         if text_width(&longer, size_px, is_bold) <= width_px {
             line = longer;
             continue;
@@ -132,21 +128,13 @@ mod tests {
             assert_eq!(lines.concat().replace(' ', ""), text.replace(' ', ""));
         }
         let lines = wrap("falls by 12\u{2009}000 mm", 80.0, 12.0, false);
-        assert_eq!(
-            lines,
-            ["falls by", "12\u{2009}000 mm"],
-            "number and unit stay together"
-        );
+        assert_eq!(lines, ["falls by", "12\u{2009}000 mm"], "number and unit stay together");
     }
 
     #[test]
     fn bold_is_wider_and_long_paragraphs_end_in_dots() {
         assert!(text_width("snow", 12.0, true) > text_width("snow", 12.0, false));
-        let lines = vec![
-            "first line".to_owned(),
-            "second line".to_owned(),
-            "third".to_owned(),
-        ];
+        let lines = vec!["first line".to_owned(), "second line".to_owned(), "third".to_owned()];
         assert_eq!(at_most(lines, 2), ["first line", "second l..."]);
     }
 }

@@ -48,33 +48,13 @@ pub struct Lettering {
 }
 
 /// The finding.
-pub const TITLE: Lettering = Lettering {
-    class: "finding",
-    size_px: 19.0,
-    is_bold: true,
-    ink: INK,
-};
+pub const TITLE: Lettering = Lettering { class: "finding", size_px: 19.0, is_bold: true, ink: INK };
 /// What is named.
-pub const NAME: Lettering = Lettering {
-    class: "name",
-    size_px: 13.0,
-    is_bold: true,
-    ink: INK,
-};
+pub const NAME: Lettering = Lettering { class: "name", size_px: 13.0, is_bold: true, ink: INK };
 /// Values and ticks.
-pub const LABEL: Lettering = Lettering {
-    class: "label",
-    size_px: 13.0,
-    is_bold: false,
-    ink: INK,
-};
+pub const LABEL: Lettering = Lettering { class: "label", size_px: 13.0, is_bold: false, ink: INK };
 /// Explanations.
-pub const NOTE: Lettering = Lettering {
-    class: "note",
-    size_px: 12.5,
-    is_bold: false,
-    ink: QUIET,
-};
+pub const NOTE: Lettering = Lettering { class: "note", size_px: 12.5, is_bold: false, ink: QUIET };
 
 impl Lettering {
     /// Width of a line in it, px.
@@ -102,11 +82,7 @@ pub fn level_ink(level: usize, reference: usize, levels: usize) -> RGBColor {
 }
 
 fn along(ramp: &[RGBColor], place: usize, places: usize) -> RGBColor {
-    let share = if places <= 1 {
-        LONE
-    } else {
-        place as f64 / (places - 1) as f64
-    };
+    let share = if places <= 1 { LONE } else { place as f64 / (places - 1) as f64 };
     let position = share * (ramp.len() - 1) as f64;
     let below = (position as usize).min(ramp.len() - 2);
     let part = position - below as f64;

@@ -106,12 +106,8 @@ struct Asked<'a> {
 pub fn answer(seasons: &Seasons, questions: &Questions<'_>) -> Findings {
     let (_, _, realizations, years) = seasons.basin_years.dim();
     let resamples = Resamples::new(questions.seed, realizations);
-    let in_basin: Vec<Asked<'_>> = seasons
-        .measures
-        .iter()
-        .enumerate()
-        .map(|(at, _)| of_basin(seasons, at))
-        .collect();
+    let in_basin: Vec<Asked<'_>> =
+        seasons.measures.iter().enumerate().map(|(at, _)| of_basin(seasons, at)).collect();
     let in_bands: Vec<Asked<'_>> = (0..questions.bands.len())
         .flat_map(|band| {
             let everywhere = |(_, measure): &(usize, &Measure)| measure.place == Place::BandsAndBasin;
@@ -147,23 +143,14 @@ pub fn answer(seasons: &Seasons, questions: &Questions<'_>) -> Findings {
 fn of_basin(seasons: &Seasons, at: usize) -> Asked<'_> {
     let years = seasons.basin_years.index_axis(Axis(1), at);
     let count = |level: usize, what: f64| {
-        years
-            .index_axis(Axis(0), level)
-            .iter()
-            .filter(|value| **value == what)
-            .count()
+        years.index_axis(Axis(0), level).iter().filter(|value| **value == what).count()
     };
     let levels = years.len_of(Axis(0));
     Asked {
         measure: &seasons.measures[at],
         periods: seasons.basin_periods.index_axis(Axis(1), at),
         undefined: (0..levels)
-            .map(|level| {
-                [
-                    count(level, crate::season::NONE),
-                    count(level, crate::season::NOT_GONE),
-                ]
-            })
+            .map(|level| [count(level, crate::season::NONE), count(level, crate::season::NOT_GONE)])
             .collect(),
         years: Some(years),
     }
@@ -173,16 +160,8 @@ fn of_band(seasons: &Seasons, band: usize, at: usize) -> Asked<'_> {
     let undefined = seasons.band_undefined.index_axis(Axis(1), band);
     Asked {
         measure: &seasons.measures[at],
-        periods: seasons
-            .band_periods
-            .view()
-            .index_axis_move(Axis(1), band)
-            .index_axis_move(Axis(1), at),
-        undefined: undefined
-            .index_axis(Axis(1), at)
-            .iter()
-            .map(|count| count.map(|n| n as usize))
-            .collect(),
+        periods: seasons.band_periods.view().index_axis_move(Axis(1), band).index_axis_move(Axis(1), at),
+        undefined: undefined.index_axis(Axis(1), at).iter().map(|count| count.map(|n| n as usize)).collect(),
         years: None,
     }
 }
@@ -233,11 +212,7 @@ impl Asked<'_> {
 
     fn ranked_years(&self, level: usize) -> Option<Ranked> {
         let years = self.years?.index_axis_move(Axis(0), level);
-        Some(Ranked::new(
-            years
-                .indexed_iter()
-                .map(|((realization, _), value)| (*value, realization)),
-        ))
+        Some(Ranked::new(years.indexed_iter().map(|((realization, _), value)| (*value, realization))))
     }
 
     /// What a level is by itself.
@@ -268,19 +243,9 @@ impl Asked<'_> {
     ) -> LevelFindings {
         let warmed: Vec<f64> = self.periods.row(level).to_vec();
         let chances =
-            reference
-                .years
-                .as_ref()
-                .zip(self.ranked_years(level))
-                .map(|(reference_years, warmed_years)| {
-                    Chances::of(
-                        &reference.periods,
-                        &warmed,
-                        reference_years,
-                        &warmed_years,
-                        resamples,
-                    )
-                });
+            reference.years.as_ref().zip(self.ranked_years(level)).map(|(reference_years, warmed_years)| {
+                Chances::of(&reference.periods, &warmed, reference_years, &warmed_years, resamples)
+            });
         let Some((shift, shifts)) = Shift::of(&reference.periods, &warmed, resamples) else {
             return LevelFindings { chances, ..found };
         };

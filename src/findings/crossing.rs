@@ -35,9 +35,7 @@ pub fn crossing(reference_c: f64, ratios: &[(f64, Option<f64>)]) -> Crossing {
         };
         if ratio > 1.0 {
             let share = (1.0 - below.1) / (ratio - below.1);
-            return Crossing::At {
-                level_c: below.0 + share * (level_c - below.0),
-            };
+            return Crossing::At { level_c: below.0 + share * (level_c - below.0) };
         }
         below = (level_c, ratio);
     }

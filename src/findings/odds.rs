@@ -38,10 +38,7 @@ impl Odds {
         let own = sides
             .iter()
             .map(|(reference, warmed)| {
-                (
-                    score(reference, warmed),
-                    reference.len() as f64 * warmed.len() as f64,
-                )
+                (score(reference, warmed), reference.len() as f64 * warmed.len() as f64)
             })
             .collect();
         Self { both_ways, own }
@@ -68,10 +65,7 @@ impl Odds {
             let derivative = ((both.0 - 2.0 * own.0) - value * (both.1 - 2.0 * own.1)) / pairs;
             squares += derivative * derivative;
         }
-        Some(Estimate {
-            value,
-            monte_carlo_error: Some(squares.sqrt()),
-        })
+        Some(Estimate { value, monte_carlo_error: Some(squares.sqrt()) })
     }
 }
 
@@ -117,9 +111,7 @@ fn score(reference: &[f64], warmed: &[f64]) -> f64 {
 /// ```
 pub fn unpaired_chance(reference: &[f64], warmed: &[f64]) -> Option<f64> {
     let ranked = |values: &[f64]| Ranked::new(values.iter().copied().zip(0..));
-    Odds::new(&ranked(reference), &ranked(warmed), reference.len())
-        .chance()
-        .map(|chance| chance.value)
+    Odds::new(&ranked(reference), &ranked(warmed), reference.len()).chance().map(|chance| chance.value)
 }
 
 #[cfg(test)]
@@ -148,22 +140,13 @@ mod tests {
         let mut random = stream(7, 0);
         let count = 40;
         let mut values = |shift: f64| -> Vec<[f64; 2]> {
-            (0..count)
-                .map(|_| [0, 1].map(|_| (20.0 * random.random::<f64>()).floor() + shift))
-                .collect()
+            (0..count).map(|_| [0, 1].map(|_| (20.0 * random.random::<f64>()).floor() + shift)).collect()
         };
         let (reference, warmed) = (values(0.0), values(-4.0));
         let ranked = |values: &[[f64; 2]]| {
-            Ranked::new(
-                values
-                    .iter()
-                    .enumerate()
-                    .flat_map(|(at, pair)| pair.map(|value| (value, at))),
-            )
+            Ranked::new(values.iter().enumerate().flat_map(|(at, pair)| pair.map(|value| (value, at))))
         };
-        let found = Odds::new(&ranked(&reference), &ranked(&warmed), count)
-            .chance()
-            .unwrap();
+        let found = Odds::new(&ranked(&reference), &ranked(&warmed), count).chance().unwrap();
         assert!((found.value - by_definition(&reference, &warmed, &vec![1.0; count])).abs() < 1e-12);
         let resampled: Vec<f64> = (0..3000)
             .map(|_| {
@@ -176,9 +159,6 @@ mod tests {
             .collect();
         let bootstrap = standard_deviation(&resampled).unwrap();
         let error = found.monte_carlo_error.unwrap();
-        assert!(
-            (error / bootstrap - 1.0).abs() < 0.08,
-            "{error} against {bootstrap}"
-        );
+        assert!((error / bootstrap - 1.0).abs() < 0.08, "{error} against {bootstrap}");
     }
 }

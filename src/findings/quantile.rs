@@ -28,11 +28,7 @@ pub(super) fn quantile_by(n: usize, p: f64, value_at: impl Fn(usize) -> f64) -> 
     }
     let (below, share) = position(n, p);
     let low = value_at(below);
-    if share == 0.0 {
-        low
-    } else {
-        between(low, value_at(below + 1), share)
-    }
+    if share == 0.0 { low } else { between(low, value_at(below + 1), share) }
 }
 
 /// Index from 0 of the value below the quantile, and how far it lies towards the next.

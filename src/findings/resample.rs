@@ -51,10 +51,7 @@ impl Estimate {
     /// The number with its error: one standard deviation over the numbers of the resamples, none where one is missing.
     pub(super) fn new(value: f64, resampled: impl IntoIterator<Item = Option<f64>>) -> Self {
         let values: Option<Vec<f64>> = resampled.into_iter().collect();
-        Self {
-            value,
-            monte_carlo_error: values.and_then(|values| standard_deviation(&values)),
-        }
+        Self { value, monte_carlo_error: values.and_then(|values| standard_deviation(&values)) }
     }
 }
 
@@ -62,10 +59,7 @@ impl Estimate {
 pub(super) fn standard_deviation(values: &[f64]) -> Option<f64> {
     let n = values.len() as f64;
     let mean = values.iter().sum::<f64>() / n;
-    let squares = values
-        .iter()
-        .map(|value| (value - mean) * (value - mean))
-        .sum::<f64>();
+    let squares = values.iter().map(|value| (value - mean) * (value - mean)).sum::<f64>();
     let deviation = (squares / (n - 1.0)).sqrt();
     deviation.is_finite().then_some(deviation)
 }
@@ -89,11 +83,7 @@ impl Ranked {
 
     /// Quantiles of a resample, in one walk; `shares` ascending. Nothing where the resample holds no value.
     pub fn quantiles<const N: usize>(&self, weights: &[u32], shares: [f64; N]) -> Option<[f64; N]> {
-        let count: usize = self
-            .values
-            .iter()
-            .map(|(_, realization)| weights[*realization] as usize)
-            .sum();
+        let count: usize = self.values.iter().map(|(_, realization)| weights[*realization] as usize).sum();
         if count == 0 {
             return None;
         }
@@ -114,11 +104,7 @@ impl Ranked {
         for (found, share) in found.iter_mut().zip(shares) {
             let (below, towards_next) = position(count, share);
             let low = reach(below);
-            *found = if towards_next == 0.0 {
-                low
-            } else {
-                between(low, reach(below + 1), towards_next)
-            };
+            *found = if towards_next == 0.0 { low } else { between(low, reach(below + 1), towards_next) };
         }
         Some(found)
     }
@@ -153,17 +139,11 @@ mod tests {
         let resamples = Resamples::new(1, sample.len());
         let mean = |weights: &[u32]| {
             Some(
-                sample
-                    .iter()
-                    .zip(weights)
-                    .map(|(value, weight)| value * f64::from(*weight))
-                    .sum::<f64>()
+                sample.iter().zip(weights).map(|(value, weight)| value * f64::from(*weight)).sum::<f64>()
                     / 10.0,
             )
         };
-        let error = Estimate::new(18.6, resamples.each(mean))
-            .monte_carlo_error
-            .unwrap();
+        let error = Estimate::new(18.6, resamples.each(mean)).monte_carlo_error.unwrap();
         assert!((error / 4.8973 - 1.0).abs() < 0.12, "{error}");
     }
 }

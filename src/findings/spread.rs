@@ -27,12 +27,7 @@ impl Spread {
         let [q05, q50, q95] = [0.05, 0.5, 0.95].map(|p| quantile(&in_order, p));
         let numbers: Vec<f64> = in_order.into_iter().filter(|value| value.is_finite()).collect();
         let standard_deviation = standard_deviation(&numbers)?;
-        (q05.is_finite() && q95.is_finite()).then_some(Self {
-            q05,
-            q50,
-            q95,
-            standard_deviation,
-        })
+        (q05.is_finite() && q95.is_finite()).then_some(Self { q05, q50, q95, standard_deviation })
     }
 
     /// The 5 %, 50 % and 95 % quantiles of every resample.

@@ -38,24 +38,18 @@ impl TwoWay {
     /// ```
     pub fn of(table: &[&[f64]]) -> Option<Self> {
         let (rows, columns) = (table.len(), table.first()?.len());
-        let is_whole = table
-            .iter()
-            .all(|row| row.len() == columns && row.iter().all(|value| value.is_finite()));
+        let is_whole =
+            table.iter().all(|row| row.len() == columns && row.iter().all(|value| value.is_finite()));
         if rows < 2 || columns < 2 || !is_whole {
             return None;
         }
         let (r, c) = (rows as f64, columns as f64);
         let row_means: Vec<f64> = table.iter().map(|row| row.iter().sum::<f64>() / c).collect();
-        let column_means: Vec<f64> = (0..columns)
-            .map(|column| table.iter().map(|row| row[column]).sum::<f64>() / r)
-            .collect();
+        let column_means: Vec<f64> =
+            (0..columns).map(|column| table.iter().map(|row| row[column]).sum::<f64>() / r).collect();
         let mean = row_means.iter().sum::<f64>() / r;
-        let squares = |values: &[f64]| {
-            values
-                .iter()
-                .map(|value| (value - mean) * (value - mean))
-                .sum::<f64>()
-        };
+        let squares =
+            |values: &[f64]| values.iter().map(|value| (value - mean) * (value - mean)).sum::<f64>();
         let level = c * squares(&row_means);
         let realization = r * squares(&column_means);
         let mut residual = 0.0;
@@ -66,12 +60,7 @@ impl TwoWay {
             }
         }
         let f_ratio = (level / (r - 1.0)) / (residual / ((r - 1.0) * (c - 1.0)));
-        Some(Self {
-            level,
-            realization,
-            residual,
-            f_ratio,
-        })
+        Some(Self { level, realization, residual, f_ratio })
     }
 
     /// Shares of the total; nothing where nothing varies.

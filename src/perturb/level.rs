@@ -37,11 +37,7 @@ pub struct MonthlyChange {
 
 impl MonthlyChange {
     /// No change.
-    pub const NONE: Self = Self {
-        tmin_c: [0.0; 12],
-        tmax_c: [0.0; 12],
-        precipitation_factor: [1.0; 12],
-    };
+    pub const NONE: Self = Self { tmin_c: [0.0; 12], tmax_c: [0.0; 12], precipitation_factor: [1.0; 12] };
 }
 
 impl Warming {
@@ -58,14 +54,7 @@ impl Warming {
 
     /// Mean of a monthly shape over the days of a common year; 1 where the level is what the year warms by.
     pub fn yearly_mean(shape: &[f64; 12]) -> f64 {
-        const DAYS: [f64; 12] = [
-            31.0, 28.0, 31.0, 30.0, 31.0, 30.0, 31.0, 31.0, 30.0, 31.0, 30.0, 31.0,
-        ];
-        shape
-            .iter()
-            .zip(DAYS)
-            .map(|(value, days)| value * days)
-            .sum::<f64>()
-            / 365.0
+        const DAYS: [f64; 12] = [31.0, 28.0, 31.0, 30.0, 31.0, 30.0, 31.0, 31.0, 30.0, 31.0, 30.0, 31.0];
+        shape.iter().zip(DAYS).map(|(value, days)| value * days).sum::<f64>() / 365.0
     }
 }

@@ -16,10 +16,8 @@ const STYLE: &str = include_str!("briefing.css");
 /// The page. Nothing is fetched and no script runs: its own policy forbids both.
 pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg]) -> Vec<u8> {
     let findings = study.findings;
-    let policy = format!(
-        "default-src 'none'; style-src 'sha256-{}'",
-        base64(&Sha256::digest(STYLE.as_bytes()))
-    );
+    let policy =
+        format!("default-src 'none'; style-src 'sha256-{}'", base64(&Sha256::digest(STYLE.as_bytes())));
     let page = html! {
         (DOCTYPE)
         html lang="en" {
@@ -242,11 +240,7 @@ fn base64(bytes: &[u8]) -> String {
         let bits = u32::from_be_bytes([0, group[0], group[1], group[2]]);
         for place in 0..4 {
             let digit = (bits >> (18 - 6 * place)) & 63;
-            text.push(if place <= chunk.len() {
-                char::from(ALPHABET[digit as usize])
-            } else {
-                '='
-            });
+            text.push(if place <= chunk.len() { char::from(ALPHABET[digit as usize]) } else { '=' });
         }
     }
     text

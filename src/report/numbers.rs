@@ -27,11 +27,7 @@ pub fn fixed(value: f64, decimals: usize) -> String {
 pub fn signed(value: f64, decimals: usize) -> String {
     let text = fixed(value, decimals);
     let is_zero = text.chars().all(|c| c == '0' || c == '.');
-    if value > 0.0 && !is_zero {
-        format!("+{text}")
-    } else {
-        text
-    }
+    if value > 0.0 && !is_zero { format!("+{text}") } else { text }
 }
 
 /// Decimals of an amount of water: whole mm, tenths below 10 mm.
@@ -46,9 +42,7 @@ pub fn amount(value_mm: f64) -> String {
 
 /// `+2 °C`; the decimals that the level has.
 pub fn level(level_c: f64) -> String {
-    let decimals = (0..3)
-        .find(|d| format!("{level_c:.*}", *d).parse() == Ok(level_c))
-        .unwrap_or(3);
+    let decimals = (0..3).find(|d| format!("{level_c:.*}", *d).parse() == Ok(level_c)).unwrap_or(3);
     format!("{} °C", signed(level_c, decimals))
 }
 

@@ -41,15 +41,8 @@ pub fn may_replace(target: &Path) -> Result<(), PublishError> {
         Err(error) if error.kind() == io::ErrorKind::NotFound => return Ok(()),
         Err(error) => return Err(at(error)),
         Ok(found) if !found.is_dir() => {
-            let stranger = target
-                .file_name()
-                .unwrap_or_default()
-                .to_string_lossy()
-                .into_owned();
-            return Err(PublishError::NotOurs {
-                target: target.display().to_string(),
-                stranger,
-            });
+            let stranger = target.file_name().unwrap_or_default().to_string_lossy().into_owned();
+            return Err(PublishError::NotOurs { target: target.display().to_string(), stranger });
         }
         Ok(_) => {}
     }
@@ -57,10 +50,7 @@ pub fn may_replace(target: &Path) -> Result<(), PublishError> {
     let mut found = Vec::new();
     list(target, Path::new(""), &mut found).map_err(at)?;
     match found.into_iter().find(|file| !ours.contains(file)) {
-        Some(stranger) => Err(PublishError::NotOurs {
-            target: target.display().to_string(),
-            stranger,
-        }),
+        Some(stranger) => Err(PublishError::NotOurs { target: target.display().to_string(), stranger }),
         None => Ok(()),
     }
 }
@@ -127,11 +117,7 @@ fn swap(fresh: TempDir, target: &Path) -> io::Result<()> {
         return Err(error);
     }
     let _ = fresh.keep();
-    if aside.is_dir() {
-        fs::remove_dir_all(&aside)
-    } else {
-        fs::remove_file(&aside)
-    }
+    if aside.is_dir() { fs::remove_dir_all(&aside) } else { fs::remove_file(&aside) }
 }
 
 /// Exchanges two paths at once; tells whether the file system can.
@@ -152,11 +138,7 @@ fn exchange(_: &Path, _: &Path) -> io::Result<bool> {
 }
 
 fn sync_folder(folder: &Path) -> io::Result<()> {
-    if cfg!(unix) {
-        File::open(folder)?.sync_all()
-    } else {
-        Ok(())
-    }
+    if cfg!(unix) { File::open(folder)?.sync_all() } else { Ok(()) }
 }
 
 /// What a folder's `run.json` says is ours; nothing where there is none of ours.
@@ -180,10 +162,7 @@ fn list(top: &Path, within: &Path, found: &mut Vec<String>) -> io::Result<()> {
         if entry.file_type()?.is_dir() {
             list(top, &path, found)?;
         } else {
-            let parts: Vec<String> = path
-                .iter()
-                .map(|part| part.to_string_lossy().into_owned())
-                .collect();
+            let parts: Vec<String> = path.iter().map(|part| part.to_string_lossy().into_owned()).collect();
             found.push(parts.join("/"));
         }
     }
@@ -191,10 +170,7 @@ fn list(top: &Path, within: &Path, found: &mut Vec<String>) -> io::Result<()> {
 }
 
 fn io_error(path: &Path, error: io::Error) -> PublishError {
-    PublishError::Io {
-        path: io_path(path),
-        error,
-    }
+    PublishError::Io { path: io_path(path), error }
 }
 
 fn io_path(path: &Path) -> String {

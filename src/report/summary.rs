@@ -184,19 +184,9 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
                 mean_change_sd_pct: study.mean_change_sd_pct,
             },
         },
-        defaults_in_force: study
-            .defaults
-            .iter()
-            .map(|(key, value)| Default { key, value })
-            .collect(),
-        unlikely: unlikely
-            .iter()
-            .map(|(about, why)| Notice { about, why })
-            .collect(),
-        left_out: LeftOut {
-            counts: study.record.counts,
-            water_years: study.record.skipped,
-        },
+        defaults_in_force: study.defaults.iter().map(|(key, value)| Default { key, value }).collect(),
+        unlikely: unlikely.iter().map(|(about, why)| Notice { about, why }).collect(),
+        left_out: LeftOut { counts: study.record.counts, water_years: study.record.skipped },
         files: files.to_vec(),
     })
 }

@@ -14,29 +14,14 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     let basin = || findings.basin.iter().map(|measure| (None, measure));
     let bands = || {
         let numbered = findings.bands.iter().enumerate();
-        numbered.flat_map(|(number, band)| {
-            band.measures
-                .iter()
-                .map(move |m| (Some((number + 1, &band.band)), m))
-        })
+        numbered
+            .flat_map(|(number, band)| band.measures.iter().map(move |m| (Some((number + 1, &band.band)), m)))
     };
     vec![
-        (
-            "tables/basin-amounts.csv".to_owned(),
-            table(basin().collect(), Kind::AmountMm),
-        ),
-        (
-            "tables/basin-dates.csv".to_owned(),
-            table(basin().collect(), Kind::DayOfWaterYear),
-        ),
-        (
-            "tables/bands-amounts.csv".to_owned(),
-            table(bands().collect(), Kind::AmountMm),
-        ),
-        (
-            "tables/bands-dates.csv".to_owned(),
-            table(bands().collect(), Kind::DayOfWaterYear),
-        ),
+        ("tables/basin-amounts.csv".to_owned(), table(basin().collect(), Kind::AmountMm)),
+        ("tables/basin-dates.csv".to_owned(), table(basin().collect(), Kind::DayOfWaterYear)),
+        ("tables/bands-amounts.csv".to_owned(), table(bands().collect(), Kind::AmountMm)),
+        ("tables/bands-dates.csv".to_owned(), table(bands().collect(), Kind::DayOfWaterYear)),
         ("tables/record-years.csv".to_owned(), record_years(study)),
     ]
 }
@@ -56,14 +41,8 @@ fn table(rows: Vec<(Place<'_>, &MeasureFindings)>, kind: Kind) -> Vec<u8> {
         header.extend(["band", "lower_m", "upper_m", "area_km2"].map(str::to_owned));
     }
     header.extend(
-        [
-            "measure",
-            "level_degC",
-            "realizations",
-            "realizations_none",
-            "realizations_not_gone",
-        ]
-        .map(str::to_owned),
+        ["measure", "level_degC", "realizations", "realizations_none", "realizations_not_gone"]
+            .map(str::to_owned),
     );
     header.extend(["q05", "q25", "q50", "q75", "q95"].map(|q| format!("{q}_{unit}")));
     header.push(format!("shift_{change_unit}"));
@@ -86,21 +65,14 @@ fn table(rows: Vec<(Place<'_>, &MeasureFindings)>, kind: Kind) -> Vec<u8> {
     );
     if !has_bands {
         header.extend(["q05", "q25", "q50", "q75", "q95"].map(|q| format!("single_year_{q}_{unit}")));
-        for chance in [
-            "period_below_reference",
-            "year_below_reference",
-            "reaches_reference_median",
-        ] {
+        for chance in ["period_below_reference", "year_below_reference", "reaches_reference_median"] {
             header.extend(
                 ["", "_monte_carlo_error", "_bound_95pct"].map(|end| format!("chance_{chance}{end}")),
             );
         }
     }
     write(&mut writer, &header);
-    for (place, measure) in rows
-        .into_iter()
-        .filter(|(_, measure)| measure.measure.kind == kind)
-    {
+    for (place, measure) in rows.into_iter().filter(|(_, measure)| measure.measure.kind == kind) {
         for level in &measure.levels {
             write(&mut writer, &row(place, &measure.measure, level, kind));
         }
@@ -123,19 +95,14 @@ fn row(place: Place<'_>, measure: &Measure, level: &LevelFindings, kind: Kind) -
     row.extend(estimate(shift.map(|shift| shift.median)));
     row.extend([shift.map(|shift| shift.q05), shift.map(|shift| shift.q95)].map(optional));
     row.extend(
-        [
-            shift.map(|shift| shift.pairs),
-            shift.map(|shift| shift.pairs_without_value),
-        ]
-        .map(|count| count.map_or(String::new(), |count| count.to_string())),
+        [shift.map(|shift| shift.pairs), shift.map(|shift| shift.pairs_without_value)]
+            .map(|count| count.map_or(String::new(), |count| count.to_string())),
     );
     if kind == Kind::AmountMm {
         row.push(optional(level.percent_change));
     }
     row.extend(estimate(level.signal_to_spread));
-    row.push(optional(
-        level.signal_to_noise.map(|ratio| ratio.against_reference),
-    ));
+    row.push(optional(level.signal_to_noise.map(|ratio| ratio.against_reference)));
     row.push(optional(level.signal_to_noise.map(|ratio| ratio.paired)));
     row.extend(level.years_undefined.map(|count| count.to_string()));
     if let Some(single_years) = &level.single_years {
@@ -143,9 +110,7 @@ fn row(place: Place<'_>, measure: &Measure, level: &LevelFindings, kind: Kind) -
         let chances = level.chances;
         row.extend(chance(chances.and_then(|chances| chances.period_below_reference)));
         row.extend(chance(chances.and_then(|chances| chances.year_below_reference)));
-        row.extend(chance(
-            chances.and_then(|chances| chances.reaches_reference_median),
-        ));
+        row.extend(chance(chances.and_then(|chances| chances.reaches_reference_median)));
     }
     row
 }
@@ -154,11 +119,7 @@ fn row(place: Place<'_>, measure: &Measure, level: &LevelFindings, kind: Kind) -
 fn record_years(study: &Study<'_>) -> Vec<u8> {
     let record = &study.record;
     let mut writer = Writer::from_writer(Vec::new());
-    let mut header = vec![
-        "water_year".to_owned(),
-        "used".to_owned(),
-        "why_left_out".to_owned(),
-    ];
+    let mut header = vec!["water_year".to_owned(), "used".to_owned(), "why_left_out".to_owned()];
     header.extend(record.measures.iter().map(|measure| measure.name.clone()));
     write(&mut writer, &header);
     let mut rows: Vec<(i32, Vec<String>)> = record
@@ -184,14 +145,7 @@ fn record_years(study: &Study<'_>) -> Vec<u8> {
 }
 
 fn quantiles(distribution: &Distribution) -> [String; 5] {
-    [
-        distribution.q05,
-        distribution.q25,
-        distribution.q50,
-        distribution.q75,
-        distribution.q95,
-    ]
-    .map(worded)
+    [distribution.q05, distribution.q25, distribution.q50, distribution.q75, distribution.q95].map(worded)
 }
 
 /// A number, or the words `none` and `not gone`.
@@ -208,10 +162,7 @@ fn optional(value: Option<f64>) -> String {
 }
 
 fn estimate(estimate: Option<Estimate>) -> [String; 2] {
-    [
-        optional(estimate.map(|e| e.value)),
-        optional(estimate.and_then(|e| e.monte_carlo_error)),
-    ]
+    [optional(estimate.map(|e| e.value)), optional(estimate.and_then(|e| e.monte_carlo_error))]
 }
 
 fn chance(chance: Option<Chance>) -> [String; 3] {

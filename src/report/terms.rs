@@ -2,14 +2,8 @@
 
 /// Terms and their meanings.
 pub const TERMS: [(&str, &str); 11] = [
-    (
-        "Snow water equivalent (SWE)",
-        "depth of water if the snow were melted, mm",
-    ),
-    (
-        "Water year",
-        "starts on the stated day and is named for the calendar year in which it ends",
-    ),
+    ("Snow water equivalent (SWE)", "depth of water if the snow were melted, mm"),
+    ("Water year", "starts on the stated day and is named for the calendar year in which it ends"),
     (
         "Warming level",
         "degrees added to the record's temperatures; the reference, 0 °C, is the record's own climate",
@@ -26,21 +20,9 @@ pub const TERMS: [(&str, &str); 11] = [
         "Precipitation spread",
         "5–95 % range of the period value over realizations at the reference, with the temperatures its years bring",
     ),
-    (
-        "Half spread",
-        "from the reference's median to the end of its spread that a shift points to",
-    ),
+    ("Half spread", "from the reference's median to the end of its spread that a shift points to"),
     ("Weather spread", "the same range over single years"),
-    (
-        "Melt-out",
-        "basin: first day after the peak with at most 5 % of it left; band: first day below 1 mm",
-    ),
-    (
-        "Snowpack outflow, water input",
-        "water leaving the pack; the same with rain on bare ground",
-    ),
-    (
-        "± behind a chance or ratio",
-        "Monte Carlo error: one standard deviation over resampled realizations",
-    ),
+    ("Melt-out", "basin: first day after the peak with at most 5 % of it left; band: first day below 1 mm"),
+    ("Snowpack outflow, water input", "water leaving the pack; the same with rain on bare ground"),
+    ("± behind a chance or ratio", "Monte Carlo error: one standard deviation over resampled realizations"),
 ];

@@ -43,18 +43,9 @@ pub fn answer_in_words(findings: &Findings, mean_change_sd_pct: Option<f64>) -> 
             .map(|level| how_much(findings, headline, level))
             .collect(),
         yardstick: yardstick(findings, headline, mean_change_sd_pct),
-        timing: findings
-            .levels_c
-            .iter()
-            .enumerate()
-            .filter_map(|(at, _)| timing(findings, at))
-            .collect(),
+        timing: findings.levels_c.iter().enumerate().filter_map(|(at, _)| timing(findings, at)).collect(),
         elevation: elevation(findings),
-        chances: headline
-            .levels
-            .iter()
-            .filter_map(|level| could_be_hidden(findings, level))
-            .collect(),
+        chances: headline.levels.iter().filter_map(|level| could_be_hidden(findings, level)).collect(),
     }
 }
 
@@ -105,22 +96,11 @@ fn how_much(findings: &Findings, headline: &MeasureFindings, at: &LevelFindings)
         change if change > 0.0 => "rises",
         _ => "stays",
     };
-    let percent = at
-        .percent_change
-        .map_or(String::new(), |percent| format!(" ({} %)", signed(percent, 0)));
+    let percent = at.percent_change.map_or(String::new(), |percent| format!(" ({} %)", signed(percent, 0)));
     let ratio = at.signal_to_spread.map_or(String::new(), |ratio| {
-        let error = ratio
-            .monte_carlo_error
-            .map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
-        let word = if ratio.value > 1.0 {
-            "outweighs"
-        } else {
-            "does not outweigh"
-        };
-        format!(
-            "; {}{error} times the half spread, so it {word} it",
-            fixed(ratio.value, 2)
-        )
+        let error = ratio.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
+        let word = if ratio.value > 1.0 { "outweighs" } else { "does not outweigh" };
+        format!("; {}{error} times the half spread, so it {word} it", fixed(ratio.value, 2))
     });
     let by = match verb {
         "stays" => String::new(),
@@ -197,10 +177,7 @@ fn yardstick(
 
 fn timing(findings: &Findings, at: usize) -> Option<String> {
     let of = |name: &str| {
-        let measure = findings
-            .basin
-            .iter()
-            .find(|measure| measure.measure.name == name)?;
+        let measure = findings.basin.iter().find(|measure| measure.measure.name == name)?;
         Some(days_moved(measure.levels[at].shift?.median.value))
     };
     let (half_melted, melt_out) = (of("melt_d50_day")?, of("melt_out_day"));
@@ -261,16 +238,12 @@ fn could_be_hidden(findings: &Findings, at: &LevelFindings) -> Option<String> {
 pub fn chance(chance: Chance) -> String {
     let percent = 100.0 * chance.estimate.value;
     match chance.bound {
-        Some(bound) if percent > 50.0 => format!(
-            "100 % (95 % sure of more than {} %)",
-            fixed(100.0 * (1.0 - bound), 0)
-        ),
+        Some(bound) if percent > 50.0 => {
+            format!("100 % (95 % sure of more than {} %)", fixed(100.0 * (1.0 - bound), 0))
+        }
         Some(bound) => format!("0 % (95 % sure of less than {} %)", fixed(100.0 * bound, 0)),
         None => {
-            let error = chance
-                .estimate
-                .monte_carlo_error
-                .map(|error| fixed(100.0 * error, 0));
+            let error = chance.estimate.monte_carlo_error.map(|error| fixed(100.0 * error, 0));
             error.map_or(format!("{} %", fixed(percent, 0)), |error| {
                 format!("{} ± {error} %", fixed(percent, 0))
             })

@@ -21,16 +21,14 @@ pub struct BasinTyped {
 const USUAL_C_PER_KM: std::ops::RangeInclusive<f64> = -8.0..=-2.0;
 
 pub(super) fn read(mut section: Section<'_>) -> Option<BasinTyped> {
-    let latitude_deg = section.required_number(
-        "latitude_deg",
-        -90.0..=90.0,
-        "degrees, negative in the southern hemisphere",
-    );
+    let latitude_deg =
+        section.required_number("latitude_deg", -90.0..=90.0, "degrees, negative in the southern hemisphere");
     let bands_file = section.required_text(
         "bands",
         "the path of a CSV file with lower_m, upper_m, area_km2",
         "add bands = \"bands.csv\"",
     );
+    section.names_file("basin.bands", bands_file.as_deref());
     let both = gradient(&mut section, "temperature_gradient_c_per_km");
     let tmin = gradient(&mut section, "tmin_temperature_gradient_c_per_km").or(both);
     let tmax = gradient(&mut section, "tmax_temperature_gradient_c_per_km").or(both);
@@ -55,10 +53,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<BasinTyped> {
     Some(BasinTyped {
         latitude_deg: latitude_deg?,
         bands_file: bands_file?,
-        temperature: TemperatureGradient {
-            tmin_c_per_km: tmin?,
-            tmax_c_per_km: tmax?,
-        },
+        temperature: TemperatureGradient { tmin_c_per_km: tmin?, tmax_c_per_km: tmax? },
         precipitation: PrecipitationGradient::new(pct_per_100m?, top_m),
     })
 }

@@ -37,16 +37,24 @@ impl<'t> Document<'t> {
             .collect();
         let mut places = HashMap::new();
         note_places("", &table, &mut places);
-        Self {
-            table,
-            places,
-            syntax_faults,
-        }
+        Self { table, places, syntax_faults }
     }
 
-    /// Faults of the text as TOML.
-    pub fn syntax_faults(&self) -> &[Fault] {
-        &self.syntax_faults
+    /// Adds the faults of the text as TOML. Where there are any, of the others only those are kept that lie wholly before
+    /// the first of them: what stands after it may have been read as something else than was meant.
+    pub(super) fn keep_what_is_certain(&self, faults: &mut Vec<Fault>) {
+        let starts = self.syntax_faults.iter().filter_map(|fault| match &fault.place {
+            Place::Span(bytes) => Some(bytes.start),
+            _ => None,
+        });
+        if let Some(first) = starts.min() {
+            faults.retain(|fault| match &fault.place {
+                Place::Key(key) => self.places.get(key).is_some_and(|place| place.value.end <= first),
+                Place::Span(bytes) => bytes.end <= first,
+                _ => false,
+            });
+        }
+        faults.extend(self.syntax_faults.iter().cloned());
     }
 
     /// Bytes of a key's value; of the nearest table above where the key was not typed; nothing where neither was.
@@ -54,11 +62,7 @@ impl<'t> Document<'t> {
         let mut path = key;
         loop {
             if let Some(place) = self.places.get(path) {
-                return Some(if path == key {
-                    place.value.clone()
-                } else {
-                    place.key.clone()
-                });
+                return Some(if path == key { place.value.clone() } else { place.key.clone() });
             }
             path = &path[..path.rfind(['.', '['])?];
         }
@@ -75,18 +79,9 @@ impl<'t> Document<'t> {
 
 fn note_places(path: &str, table: &DeTable<'_>, places: &mut HashMap<String, KeyPlace>) {
     for (key, value) in table {
-        let path = if path.is_empty() {
-            key.get_ref().to_string()
-        } else {
-            format!("{path}.{}", key.get_ref())
-        };
-        places.insert(
-            path.clone(),
-            KeyPlace {
-                key: key.span(),
-                value: value.span(),
-            },
-        );
+        let path =
+            if path.is_empty() { key.get_ref().to_string() } else { format!("{path}.{}", key.get_ref()) };
+        places.insert(path.clone(), KeyPlace { key: key.span(), value: value.span() });
         note_inside(&path, value.get_ref(), places);
     }
 }
@@ -97,10 +92,7 @@ fn note_inside(path: &str, value: &DeValue<'_>, places: &mut HashMap<String, Key
         DeValue::Array(array) => {
             for (number, element) in array.iter().enumerate() {
                 let path = format!("{path}[{number}]");
-                let place = KeyPlace {
-                    key: element.span(),
-                    value: element.span(),
-                };
+                let place = KeyPlace { key: element.span(), value: element.span() };
                 places.insert(path.clone(), place);
                 note_inside(&path, element.get_ref(), places);
             }

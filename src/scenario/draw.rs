@@ -56,24 +56,11 @@ fn spot<'a>(fault: &'a Fault, drawing: &Drawing<'a>) -> Option<Spot<'a>> {
         bytes,
     };
     match &fault.place {
-        Place::Key(key) => drawing
-            .document
-            .value_span(key)
-            .map(|bytes| in_scenario(key, bytes)),
+        Place::Key(key) => drawing.document.value_span(key).map(|bytes| in_scenario(key, bytes)),
         Place::Span(bytes) => Some(in_scenario("", bytes.clone())),
-        Place::Cell {
-            file,
-            line,
-            column,
-            text,
-            bytes,
-        } => Some(Spot {
-            file,
-            name: column,
-            text,
-            first_line: *line,
-            bytes: bytes.clone(),
-        }),
+        Place::Cell { file, line, column, text, bytes } => {
+            Some(Spot { file, name: column, text, first_line: *line, bytes: bytes.clone() })
+        }
         Place::File(_) => None,
     }
 }
@@ -106,23 +93,11 @@ pub fn located(fault: &Fault, drawing: &Drawing<'_>) -> Located {
 
 /// Draws all faults, in the order of the files they lie in and of their lines.
 pub fn draw(faults: &[Fault], drawing: &Drawing<'_>) -> String {
-    let mut placed: Vec<(Located, &Fault)> = faults
-        .iter()
-        .map(|fault| (located(fault, drawing), fault))
-        .collect();
-    placed.sort_by_key(|(place, _)| {
-        (
-            place.file != drawing.file,
-            place.file.clone(),
-            place.line,
-            place.column,
-        )
-    });
-    let renderer = if drawing.is_coloured {
-        Renderer::styled()
-    } else {
-        Renderer::plain()
-    };
+    let mut placed: Vec<(Located, &Fault)> =
+        faults.iter().map(|fault| (located(fault, drawing), fault)).collect();
+    placed
+        .sort_by_key(|(place, _)| (place.file != drawing.file, place.file.clone(), place.line, place.column));
+    let renderer = if drawing.is_coloured { Renderer::styled() } else { Renderer::plain() };
     let mut drawn = String::new();
     for (place, fault) in &placed {
         let title = match (place.line, place.name.as_str()) {
@@ -145,18 +120,11 @@ pub fn draw(faults: &[Fault], drawing: &Drawing<'_>) -> String {
         drawn += &renderer.render(&[group]);
         drawn += "\n\n";
     }
-    let count = if placed.len() == 1 {
-        "1 fault".to_owned()
-    } else {
-        format!("{} faults", placed.len())
-    };
+    let count = if placed.len() == 1 { "1 fault".to_owned() } else { format!("{} faults", placed.len()) };
     drawn + &format!("{count}; nothing was run\n")
 }
 
 /// Writes out what is unlikely, a line each.
 pub fn unlikely_lines(unlikely: &[Unlikely]) -> String {
-    unlikely
-        .iter()
-        .map(|notice| format!("unlikely: {}: {}\n", notice.about, notice.why))
-        .collect()
+    unlikely.iter().map(|notice| format!("unlikely: {}: {}\n", notice.about, notice.why)).collect()
 }

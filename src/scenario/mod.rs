@@ -57,6 +57,8 @@ pub struct Draft {
     pub title: Option<String>,
     /// The seed.
     pub seed: u64,
+    /// Data files that the scenario names, each with its key, also where the table around it has a fault.
+    pub named_files: Vec<(&'static str, String)>,
     /// `[basin]`.
     pub basin: Option<BasinTyped>,
     /// `[weather]`.
@@ -96,10 +98,6 @@ impl Draft {
 /// Reads a scenario and collects all its faults.
 pub fn read(document: &Document<'_>) -> Draft {
     let notes = Notes::default();
-    notes
-        .faults
-        .borrow_mut()
-        .extend(document.syntax_faults().iter().cloned());
     let mut top = document.top(&notes);
     let title = top.required_text("title", "a name for the study", "add title = \"...\" at the top");
     let seed = top.whole_or("seed", 1, 0..=i64::MAX as u64);
@@ -112,9 +110,7 @@ pub fn read(document: &Document<'_>) -> Draft {
     let warming = warming::read(top.section("warming"));
     let realizations = realizations::read(top.section("realizations"));
     top.finish();
-    if document.syntax_faults().is_empty() {
-        notes.into_draft(title, seed, (basin, weather, season, snow, warming, realizations))
-    } else {
-        notes.into_draft(title, seed, (None, None, None, None, None, None))
-    }
+    let mut draft = notes.into_draft(title, seed, (basin, weather, season, snow, warming, realizations));
+    document.keep_what_is_certain(&mut draft.faults);
+    draft
 }

@@ -26,9 +26,7 @@ fn distance(a: &str, b: &str) -> usize {
     for i in 1..=a.len() {
         for j in 1..=b.len() {
             let change = usize::from(a[i - 1] != b[j - 1]);
-            let mut least = (table[i - 1][j] + 1)
-                .min(table[i][j - 1] + 1)
-                .min(table[i - 1][j - 1] + change);
+            let mut least = (table[i - 1][j] + 1).min(table[i][j - 1] + 1).min(table[i - 1][j - 1] + change);
             if i > 1 && j > 1 && a[i - 1] == b[j - 2] && a[i - 2] == b[j - 1] {
                 least = least.min(table[i - 2][j - 2] + 1);
             }

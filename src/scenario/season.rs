@@ -30,9 +30,7 @@ pub(super) fn read(mut section: Section<'_>, is_southern: bool) -> Option<Season
     } else {
         section.day_pairs("volume_windows");
         section.default("volume_windows", format!("[{window:?}]"));
-        MonthDay::parse(window[0])
-            .zip(MonthDay::parse(window[1]))
-            .map(|(from, to)| vec![[from, to]])
+        MonthDay::parse(window[0]).zip(MonthDay::parse(window[1])).map(|(from, to)| vec![[from, to]])
     };
     if let (Some(starts), Some(windows)) = (starts, &windows) {
         check_windows(&section, WaterYearStart(starts), windows);
@@ -52,10 +50,7 @@ fn read_surveys(section: &Section<'_>, texts: &[String]) -> Option<Vec<MonthDay>
         .map(|(at, text)| section.parse_day(&format!("survey_dates[{at}]"), text))
         .collect();
     let days: Vec<MonthDay> = days.into_iter().collect::<Option<_>>()?;
-    let repeated = days
-        .iter()
-        .enumerate()
-        .find(|(at, day)| days[..*at].contains(day));
+    let repeated = days.iter().enumerate().find(|(at, day)| days[..*at].contains(day));
     if days.is_empty() || repeated.is_some() {
         section.fault(Fault::key(
             section.path_of("survey_dates"),
@@ -77,10 +72,7 @@ fn check_windows(section: &Section<'_>, starts: WaterYearStart, windows: &[[Mont
             section.fault(Fault::key(
                 section.path_of(&format!("volume_windows[{at}]")),
                 format!("{from} to {to}"),
-                format!(
-                    "a window inside one water year, which starts on {}, each once",
-                    starts.0.words()
-                ),
+                format!("a window inside one water year, which starts on {}, each once", starts.0.words()),
                 "put the earlier day first, and let the window end before the next water year",
             ));
         }

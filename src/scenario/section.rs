@@ -27,6 +27,7 @@ pub(super) struct Notes {
     pub faults: RefCell<Vec<Fault>>,
     pub unlikely: RefCell<Vec<Unlikely>>,
     pub defaults: RefCell<Vec<DefaultInForce>>,
+    pub named_files: RefCell<Vec<(&'static str, String)>>,
 }
 
 type Parts = (
@@ -53,6 +54,7 @@ impl Notes {
             faults: self.faults.into_inner(),
             unlikely: self.unlikely.into_inner(),
             defaults: self.defaults.into_inner(),
+            named_files: self.named_files.into_inner(),
         }
     }
 }
@@ -73,22 +75,12 @@ impl<'d> Section<'d> {
         path: String,
         table: Option<&'d DeTable<'d>>,
     ) -> Self {
-        Self {
-            document,
-            notes,
-            path,
-            table,
-            known: Vec::new(),
-        }
+        Self { document, notes, path, table, known: Vec::new() }
     }
 
     /// The dotted path of one of the table's keys.
     pub fn path_of(&self, key: &str) -> String {
-        if self.path.is_empty() {
-            key.to_owned()
-        } else {
-            format!("{}.{key}", self.path)
-        }
+        if self.path.is_empty() { key.to_owned() } else { format!("{}.{key}", self.path) }
     }
 
     /// Notes a fault.
@@ -98,18 +90,20 @@ impl<'d> Section<'d> {
 
     /// Notes something unlikely about a key.
     pub fn unlikely(&self, key: &str, why: impl Into<String>) {
-        self.notes
-            .unlikely
-            .borrow_mut()
-            .push(Unlikely::new(self.path_of(key), why));
+        self.notes.unlikely.borrow_mut().push(Unlikely::new(self.path_of(key), why));
     }
 
     /// Notes the default of a key that was not typed.
     pub fn default(&self, key: &str, value: impl std::fmt::Display) {
-        self.notes.defaults.borrow_mut().push(DefaultInForce {
-            key: self.path_of(key),
-            value: value.to_string(),
-        });
+        self.notes
+            .defaults
+            .borrow_mut()
+            .push(DefaultInForce { key: self.path_of(key), value: value.to_string() });
+    }
+
+    /// Notes that a key names a data file.
+    pub fn names_file(&self, key: &'static str, file: Option<&str>) {
+        self.notes.named_files.borrow_mut().extend(file.map(|file| (key, file.to_owned())));
     }
 
     /// Whether the key was typed.
@@ -135,12 +129,7 @@ impl<'d> Section<'d> {
 
     fn missing(&self, key: &str, expected: &str, mend: &str) {
         if self.table.is_some() {
-            self.fault(Fault::key(
-                self.path_of(key),
-                format!("no '{key}'"),
-                expected,
-                mend,
-            ));
+            self.fault(Fault::key(self.path_of(key), format!("no '{key}'"), expected, mend));
         }
     }
 
@@ -161,16 +150,8 @@ impl<'d> Section<'d> {
     /// A table that must be there.
     pub fn required_section(&mut self, key: &'static str) -> Section<'d> {
         if !self.has(key) {
-            let (found, mend) = (
-                format!("no [{key}]"),
-                format!("add a line [{key}] and its keys below it"),
-            );
-            self.fault(Fault::key(
-                self.path_of(key),
-                found,
-                format!("a table [{key}]"),
-                mend,
-            ));
+            let (found, mend) = (format!("no [{key}]"), format!("add a line [{key}] and its keys below it"));
+            self.fault(Fault::key(self.path_of(key), found, format!("a table [{key}]"), mend));
         }
         self.section(key)
     }
@@ -271,11 +252,7 @@ impl<'d> Section<'d> {
 
     /// Twelve numbers, January first, if they were typed; with `or_one`, one number for all months will do.
     pub fn monthly(&mut self, key: &'static str, or_one: bool) -> Option<[f64; 12]> {
-        if or_one
-            && self
-                .value(key)
-                .is_some_and(|value| !matches!(value, DeValue::Array(_)))
-        {
+        if or_one && self.value(key).is_some_and(|value| !matches!(value, DeValue::Array(_))) {
             return self.number(key).map(|number| [number; 12]);
         }
         let numbers = self.numbers(key)?;
@@ -331,10 +308,9 @@ impl<'d> Section<'d> {
     pub fn texts(&mut self, key: &'static str) -> Option<Vec<String>> {
         let value = self.value(key)?;
         let texts: Option<Vec<String>> = match value {
-            DeValue::Array(array) => array
-                .iter()
-                .map(|element| element.get_ref().as_str().map(str::to_owned))
-                .collect(),
+            DeValue::Array(array) => {
+                array.iter().map(|element| element.get_ref().as_str().map(str::to_owned)).collect()
+            }
             _ => None,
         };
         if texts.is_none() {
@@ -354,12 +330,7 @@ impl<'d> Section<'d> {
             Some(word) => format!("did you mean {word:?}?"),
             None => "take one of these".to_owned(),
         };
-        self.fault(Fault::key(
-            self.path_of(key),
-            format!("{typed:?}"),
-            words.join(" or "),
-            mend,
-        ));
+        self.fault(Fault::key(self.path_of(key), format!("{typed:?}"), words.join(" or "), mend));
         None
     }
 
@@ -419,10 +390,7 @@ impl<'d> Section<'d> {
                 continue;
             }
             let (expected, mend) = match nearest(key, self.known.iter().copied()) {
-                Some(word) => (
-                    format!("'{word}'?"),
-                    format!("write '{word}', or take the key out"),
-                ),
+                Some(word) => (format!("'{word}'?"), format!("write '{word}', or take the key out")),
                 None => (
                     format!("one of: {}", self.known.join(", ")),
                     "take it out, or check its table".to_owned(),
@@ -440,9 +408,9 @@ impl<'d> Section<'d> {
 
 fn finite(value: &DeValue<'_>) -> Option<f64> {
     match value {
-        DeValue::Integer(integer) => i64::from_str_radix(integer.as_str(), integer.radix())
-            .ok()
-            .map(|n| n as f64),
+        DeValue::Integer(integer) => {
+            i64::from_str_radix(integer.as_str(), integer.radix()).ok().map(|n| n as f64)
+        }
         DeValue::Float(float) => float.as_str().parse().ok(),
         _ => None,
     }

@@ -11,10 +11,8 @@ enum PhaseWord {
 
 pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern: bool) -> Option<SnowParams> {
     let rain_snow = read_phase(section.section("rain_snow"));
-    let degree_rule = section.choice(
-        "degree_rule",
-        &[("diurnal", DegreeRule::Diurnal), ("mean", DegreeRule::Mean)],
-    );
+    let degree_rule =
+        section.choice("degree_rule", &[("diurnal", DegreeRule::Diurnal), ("mean", DegreeRule::Mean)]);
     let mut factor = section.section("degree_day_factor_mm_per_c_day");
     let raw = RawSnow {
         rain_snow,
@@ -44,17 +42,9 @@ pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern:
 }
 
 fn read_phase(mut section: Section<'_>) -> Option<PhaseRule> {
-    let rule = section.choice(
-        "rule",
-        &[("linear", PhaseWord::Linear), ("step", PhaseWord::Step)],
-    );
-    let (
-        PhaseRule::Linear {
-            snow_only_below_c,
-            rain_only_above_c,
-        },
-        PhaseRule::Step { half_snow_at_c },
-    ) = (PhaseRule::LINEAR, PhaseRule::STEP)
+    let rule = section.choice("rule", &[("linear", PhaseWord::Linear), ("step", PhaseWord::Step)]);
+    let (PhaseRule::Linear { snow_only_below_c, rain_only_above_c }, PhaseRule::Step { half_snow_at_c }) =
+        (PhaseRule::LINEAR, PhaseRule::STEP)
     else {
         return None;
     };
@@ -93,10 +83,7 @@ fn note_defaults(section: &Section<'_>, raw: &RawSnow, snow: &SnowParams) {
         DegreeRule::Mean => "mean",
     };
     let phase = match snow.rain_snow {
-        PhaseRule::Linear {
-            snow_only_below_c,
-            rain_only_above_c,
-        } => format!(
+        PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => format!(
             "{{ rule = \"linear\", snow_only_below_c = {snow_only_below_c}, rain_only_above_c = {rain_only_above_c} }}"
         ),
         PhaseRule::Step { half_snow_at_c } => {
@@ -106,41 +93,21 @@ fn note_defaults(section: &Section<'_>, raw: &RawSnow, snow: &SnowParams) {
     let factor = "degree_day_factor_mm_per_c_day";
     let defaults = [
         (raw.rain_snow.is_none(), "rain_snow".to_owned(), phase),
-        (
-            raw.degree_rule.is_none(),
-            "degree_rule".to_owned(),
-            format!("{rule:?}"),
-        ),
-        (
-            raw.factor_lowest.is_none(),
-            format!("{factor}.lowest"),
-            snow.degree_day_factor_lowest.to_string(),
-        ),
+        (raw.degree_rule.is_none(), "degree_rule".to_owned(), format!("{rule:?}")),
+        (raw.factor_lowest.is_none(), format!("{factor}.lowest"), snow.degree_day_factor_lowest.to_string()),
         (
             raw.factor_highest.is_none(),
             format!("{factor}.highest"),
             snow.degree_day_factor_highest.to_string(),
         ),
-        (
-            raw.highest_on.is_none(),
-            format!("{factor}.highest_on"),
-            format!("\"{}\"", snow.highest_on),
-        ),
-        (
-            raw.melt_base_c.is_none(),
-            "melt_base_c".to_owned(),
-            snow.melt_base_c.to_string(),
-        ),
+        (raw.highest_on.is_none(), format!("{factor}.highest_on"), format!("\"{}\"", snow.highest_on)),
+        (raw.melt_base_c.is_none(), "melt_base_c".to_owned(), snow.melt_base_c.to_string()),
         (
             raw.liquid_holding_fraction.is_none(),
             "liquid_holding_fraction".to_owned(),
             snow.liquid_holding_fraction.to_string(),
         ),
-        (
-            raw.refreeze_fraction.is_none(),
-            "refreeze_fraction".to_owned(),
-            snow.refreeze_fraction.to_string(),
-        ),
+        (raw.refreeze_fraction.is_none(), "refreeze_fraction".to_owned(), snow.refreeze_fraction.to_string()),
     ];
     for (is_default, key, value) in defaults {
         if is_default {

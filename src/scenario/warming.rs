@@ -28,12 +28,8 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
             Some(vec![0.0, 1.0, 2.0, 3.0, 4.0])
         }
     };
-    let reference_c = section.number_or(
-        "reference_c",
-        0.0,
-        -10.0..=15.0,
-        "the level all others are compared with",
-    );
+    let reference_c =
+        section.number_or("reference_c", 0.0, -10.0..=15.0, "the level all others are compared with");
     let both = shape(&mut section, "monthly_shape");
     let tmin = shape(&mut section, "tmin_monthly_shape");
     let tmax = shape(&mut section, "tmax_monthly_shape");
@@ -59,22 +55,13 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
         tmax_monthly_shape: tmax.unwrap_or(both),
         precipitation_change_pct_per_c,
     };
-    Some(WarmingTyped {
-        levels_c,
-        reference,
-        warming,
-    })
+    Some(WarmingTyped { levels_c, reference, warming })
 }
 
 fn check_levels(section: &Section<'_>, levels: Vec<f64>) -> Option<Vec<f64>> {
     let mut sound = true;
     let mut complain = |at: usize, found: String, expected: &str, mend: &str| {
-        section.fault(Fault::key(
-            section.path_of(&format!("levels_c[{at}]")),
-            found,
-            expected,
-            mend,
-        ));
+        section.fault(Fault::key(section.path_of(&format!("levels_c[{at}]")), found, expected, mend));
         sound = false;
     };
     for (at, level) in levels.iter().enumerate() {
@@ -86,12 +73,7 @@ fn check_levels(section: &Section<'_>, levels: Vec<f64>) -> Option<Vec<f64>> {
                 "it is degC, not degF or percent",
             );
         } else if levels[..at].contains(level) {
-            complain(
-                at,
-                format!("{level} a second time"),
-                "each level once",
-                "take one of them out",
-            );
+            complain(at, format!("{level} a second time"), "each level once", "take one of them out");
         }
     }
     if levels.is_empty() || levels.len() > MOST_LEVELS {

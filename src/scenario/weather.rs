@@ -36,16 +36,11 @@ impl WeatherTyped {
 const RESET_TOLERANCE_MM: f64 = 50.0;
 
 pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
-    let file = section.required_text(
-        "file",
-        "the path of the station's CSV file",
-        "add file = \"weather.csv\"",
-    );
-    let station_elevation_m = section.required_number(
-        "station_elevation_m",
-        -500.0..=9000.0,
-        "add it, in metres above the sea",
-    );
+    let file =
+        section.required_text("file", "the path of the station's CSV file", "add file = \"weather.csv\"");
+    section.names_file("weather.file", file.as_deref());
+    let station_elevation_m =
+        section.required_number("station_elevation_m", -500.0..=9000.0, "add it, in metres above the sea");
     let date = read_date(section.section("date"));
     let temperature = read_temperatures(&mut section);
     let precipitation = read_precipitation(section.required_section("precipitation"));
@@ -136,37 +131,23 @@ fn read_temperatures(section: &mut Section<'_>) -> Option<TemperatureColumns> {
             }
             let tmin = read_temperature(section.required_section("tmin"));
             let tmax = read_temperature(section.required_section("tmax"));
-            Some(TemperatureColumns::Extremes {
-                tmin: tmin?,
-                tmax: tmax?,
-            })
+            Some(TemperatureColumns::Extremes { tmin: tmin?, tmax: tmax? })
         }
     }
 }
 
 fn read_temperature(mut section: Section<'_>) -> Option<TemperatureColumn> {
-    let column = section.required_text(
-        "column",
-        "the column's name in the header",
-        "add column = \"...\"",
-    );
+    let column = section.required_text("column", "the column's name in the header", "add column = \"...\"");
     let unit = section.choice("unit", &TemperatureUnit::NAMES);
     if unit.is_none() && !section.has("unit") {
         section.required_text("unit", "\"degC\", \"degF\" or \"K\"", "add unit = \"degC\"");
     }
     section.finish();
-    Some(TemperatureColumn {
-        column: column?,
-        unit: unit?,
-    })
+    Some(TemperatureColumn { column: column?, unit: unit? })
 }
 
 fn read_precipitation(mut section: Section<'_>) -> Option<PrecipitationColumn> {
-    let column = section.required_text(
-        "column",
-        "the column's name in the header",
-        "add column = \"...\"",
-    );
+    let column = section.required_text("column", "the column's name in the header", "add column = \"...\"");
     let unit = section.choice("unit", &DepthUnit::NAMES);
     if unit.is_none() && !section.has("unit") {
         section.required_text("unit", "\"mm\", \"cm\" or \"in\"", "add unit = \"mm\"");
@@ -178,10 +159,7 @@ fn read_precipitation(mut section: Section<'_>) -> Option<PrecipitationColumn> {
         Some(false)
     };
     let gauge = if is_accumulating == Some(true) {
-        let readings = [
-            ("start-of-day", Reading::StartOfDay),
-            ("end-of-day", Reading::EndOfDay),
-        ];
+        let readings = [("start-of-day", Reading::StartOfDay), ("end-of-day", Reading::EndOfDay)];
         let reading = section.choice("reading", &readings);
         if reading.is_none() && !section.has("reading") {
             section.required_text(
@@ -196,19 +174,12 @@ fn read_precipitation(mut section: Section<'_>) -> Option<PrecipitationColumn> {
             0.0..=2000.0,
             "a fall beyond it means that the gauge was set back",
         );
-        reading.map(|reading| Gauge::Accumulating {
-            reading,
-            reset_tolerance_mm,
-        })
+        reading.map(|reading| Gauge::Accumulating { reading, reset_tolerance_mm })
     } else {
         is_accumulating.map(|_| Gauge::Daily)
     };
     section.finish();
-    Some(PrecipitationColumn {
-        column: column?,
-        unit: unit?,
-        gauge: gauge?,
-    })
+    Some(PrecipitationColumn { column: column?, unit: unit?, gauge: gauge? })
 }
 
 fn read_multiplier(section: &mut Section<'_>) -> Option<GaugeMultiplier> {
@@ -247,10 +218,6 @@ fn read_format(section: &mut Section<'_>) -> Option<Format> {
     let separator = section.text_or("separator", ",");
     let comment = section.text_or("comment", "#");
     let separator = one_byte(section, "separator", &separator)?;
-    let comment = if comment.is_empty() {
-        None
-    } else {
-        Some(one_byte(section, "comment", &comment)?)
-    };
+    let comment = if comment.is_empty() { None } else { Some(one_byte(section, "comment", &comment)?) };
     Some(Format { separator, comment })
 }

@@ -42,12 +42,7 @@ pub struct Measure {
 
 impl Measure {
     pub(super) fn amount(name: String, title: String) -> Self {
-        Self {
-            name,
-            title,
-            kind: Kind::AmountMm,
-            place: Place::BandsAndBasin,
-        }
+        Self { name, title, kind: Kind::AmountMm, place: Place::BandsAndBasin }
     }
 
     pub(super) fn date(name: &str, title: &str) -> Self {

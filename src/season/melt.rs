@@ -14,10 +14,7 @@ pub(super) fn list(_: &SeasonSettings) -> Vec<Measure> {
         Measure::date("melt_d90_day", "day with 90 % of the net melt done"),
         Measure::date("half_gone_day", "half-gone day"),
         Measure::date("melt_out_day", "melt-out"),
-        Measure {
-            place: Place::Basin,
-            ..Measure::date("last_snow_day", "last day with snow")
-        },
+        Measure { place: Place::Basin, ..Measure::date("last_snow_day", "last day with snow") },
     ]
 }
 
@@ -32,18 +29,11 @@ pub(super) fn take(block: &mut YearBlock, peaks: &Peaks, _: &SeasonSettings, int
         let has_timing = peaks.swe_mm[column] >= LEAST_PEAK_MM;
         let has_melt = has_timing && total[column] >= LEAST_MELT_MM;
         for (measure, share) in MELT_SHARES.into_iter().enumerate() {
-            let day = if has_melt {
-                first_day_with(block, column, share * total[column])
-            } else {
-                NONE
-            };
+            let day = if has_melt { first_day_with(block, column, share * total[column]) } else { NONE };
             set(measure, day);
         }
-        let [half_gone, melt_out, last_snow] = if has_timing {
-            departure(block, peaks, column)
-        } else {
-            [NONE; 3]
-        };
+        let [half_gone, melt_out, last_snow] =
+            if has_timing { departure(block, peaks, column) } else { [NONE; 3] };
         set(3, half_gone);
         set(4, melt_out);
         set(5, last_snow);
@@ -83,11 +73,7 @@ fn departure(block: &YearBlock, peaks: &Peaks, column: usize) -> [f64; 3] {
     let half_gone = (peak_day + 1..=block.days).find(|day| swe(*day) <= peak / 2.0);
     let is_basin = column >= block.mixes_at;
     let is_out = |swe: f64| {
-        if is_basin {
-            swe <= BASIN_MELT_OUT_SHARE * peak
-        } else {
-            swe < BARE_MM
-        }
+        if is_basin { swe <= BASIN_MELT_OUT_SHARE * peak } else { swe < BARE_MM }
     };
     let melt_out = half_gone.and_then(|from| (from..=block.days).find(|day| is_out(swe(*day))));
     let last_snow = melt_out.and_then(|_| (1..=block.days).rev().find(|day| swe(*day) >= BARE_MM));

@@ -49,18 +49,9 @@ struct Family {
 
 /// Every family. Those that only read come before `melt`, which accumulates the block's net melt in place.
 const FAMILIES: [Family; 3] = [
-    Family {
-        list: state::list,
-        take: state::take,
-    },
-    Family {
-        list: outflow::list,
-        take: outflow::take,
-    },
-    Family {
-        list: melt::list,
-        take: melt::take,
-    },
+    Family { list: state::list, take: state::take },
+    Family { list: outflow::list, take: outflow::take },
+    Family { list: melt::list, take: melt::take },
 ];
 
 /// Each column's highest SWE and its day, which most families need.
@@ -81,11 +72,7 @@ impl Measures {
     pub fn new(settings: SeasonSettings) -> Self {
         let lists = FAMILIES.map(|family| (family.list)(&settings));
         let counts = [0, 1, 2].map(|family: usize| lists[family].len());
-        Self {
-            settings,
-            list: lists.into_iter().flatten().collect(),
-            counts,
-        }
+        Self { settings, list: lists.into_iter().flatten().collect(), counts }
     }
 
     /// The measures, in the order in which they are taken.
@@ -103,15 +90,8 @@ impl Measures {
     /// The block's net melt is accumulated in place: take the measures last.
     pub fn take(&self, block: &mut YearBlock, into: &mut [f64]) {
         let width = block.width;
-        let mut peaks = Peaks {
-            swe_mm: vec![0.0; width],
-            day: vec![1.0; width],
-        };
-        rows::highest(
-            &block.swe_mm[..block.days * width],
-            &mut peaks.swe_mm,
-            &mut peaks.day,
-        );
+        let mut peaks = Peaks { swe_mm: vec![0.0; width], day: vec![1.0; width] };
+        rows::highest(&block.swe_mm[..block.days * width], &mut peaks.swe_mm, &mut peaks.day);
         let mut rest = into;
         for (family, count) in FAMILIES.iter().zip(self.counts) {
             let (part, after) = rest.split_at_mut(count * width);

@@ -14,12 +14,7 @@ pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
             Measure::amount(format!("water_input_{name}_mm"), format!("water input, {title}")),
         ]
     });
-    windows
-        .chain([Measure::date(
-            "outflow_centroid_day",
-            "centroid of snowpack outflow",
-        )])
-        .collect()
+    windows.chain([Measure::date("outflow_centroid_day", "centroid of snowpack outflow")]).collect()
 }
 
 pub(super) fn take(block: &mut YearBlock, peaks: &Peaks, settings: &SeasonSettings, into: &mut [f64]) {
@@ -39,10 +34,6 @@ pub(super) fn take(block: &mut YearBlock, peaks: &Peaks, settings: &SeasonSettin
     centroid.fill(0.0);
     rows::add_with_moment(&block.outflow_mm[..block.days * width], &mut sum, centroid);
     for ((centroid, sum), peak) in centroid.iter_mut().zip(&sum).zip(&peaks.swe_mm) {
-        *centroid = if *sum > 0.0 && *peak >= LEAST_PEAK_MM {
-            *centroid / sum
-        } else {
-            NONE
-        };
+        *centroid = if *sum > 0.0 && *peak >= LEAST_PEAK_MM { *centroid / sum } else { NONE };
     }
 }

@@ -57,11 +57,7 @@ pub(super) fn accumulate(table: &mut [f64], total: &mut [f64], reached: &mut [f6
         let (total, reached) = (&mut total[..width], &mut reached[..width]);
         for column in 0..width {
             total[column] += row[column];
-            reached[column] = if total[column] > reached[column] {
-                total[column]
-            } else {
-                reached[column]
-            };
+            reached[column] = if total[column] > reached[column] { total[column] } else { reached[column] };
             row[column] = reached[column];
         }
     }

@@ -27,14 +27,7 @@ impl GaugeMultiplier {
         let mut unlikely = Vec::new();
         for (name, value) in [("rain", self.rain), ("snow", self.snow)] {
             let key = format!("weather.gauge_multiplier.{name}");
-            within(
-                &mut faults,
-                &key,
-                value,
-                0.1..=5.0,
-                "",
-                "1.1 says that 10 % more fell than was caught",
-            );
+            within(&mut faults, &key, value, 0.1..=5.0, "", "1.1 says that 10 % more fell than was caught");
             if value < 1.0 {
                 unlikely.push(Unlikely::new(
                     key,
@@ -42,11 +35,7 @@ impl GaugeMultiplier {
                 ));
             }
         }
-        if faults.is_empty() {
-            Ok(unlikely)
-        } else {
-            Err(faults)
-        }
+        if faults.is_empty() { Ok(unlikely) } else { Err(faults) }
     }
 }
 

@@ -76,12 +76,7 @@ impl<'l> Engine<'l> {
             outflow: row(),
             bare_ground_rain: row(),
         };
-        Self {
-            lanes,
-            path,
-            state,
-            block: YearBlock::new(lanes.width, lanes.mix_width, with_detail),
-        }
+        Self { lanes, path, state, block: YearBlock::new(lanes.width, lanes.mix_width, with_detail) }
     }
 
     /// Takes all snow away.
@@ -97,11 +92,7 @@ impl<'l> Engine<'l> {
     pub fn year(&mut self, weather: YearView<'_>) -> Result<&mut YearBlock, OpenLedger> {
         self.block.first = weather.first;
         self.block.days = weather.mean_c.len();
-        for ledger in [
-            &mut self.state.input,
-            &mut self.state.outflow,
-            &mut self.state.bare_ground_rain,
-        ] {
+        for ledger in [&mut self.state.input, &mut self.state.outflow, &mut self.state.bare_ground_rain] {
             ledger.fill(0.0);
         }
         let (lanes, state, block) = (self.lanes, &mut self.state, &mut self.block);
@@ -115,10 +106,8 @@ impl<'l> Engine<'l> {
     }
 
     fn close_ledgers(&self) -> Result<(), OpenLedger> {
-        let (first, last) = (
-            self.block.row(&self.block.swe_mm, 0),
-            self.block.row(&self.block.swe_mm, self.block.days),
-        );
+        let (first, last) =
+            (self.block.row(&self.block.swe_mm, 0), self.block.row(&self.block.swe_mm, self.block.days));
         for lane in 0..self.lanes.count() {
             let change_mm = last[lane] - first[lane];
             let state = &self.state;
@@ -160,17 +149,9 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
         let month = month..month + width;
         let is_wet = precipitation_mm > 0.0;
 
-        let mean_from = if is_wet || block.detail.is_some() {
-            0
-        } else {
-            with_snow
-        };
+        let mean_from = if is_wet || block.detail.is_some() { 0 } else { with_snow };
         let offset = &lanes.mean_offset_c[month.clone()];
-        mean_row(
-            &mut state.mean[mean_from..],
-            weather.mean_c[day],
-            &offset[mean_from..],
-        );
+        mean_row(&mut state.mean[mean_from..], weather.mean_c[day], &offset[mean_from..]);
         let mut from = with_snow;
         if is_wet {
             let share = &lanes.precipitation_factor[month.clone()];
@@ -195,12 +176,7 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
         for table in [&mut *next_swe, &mut *net_melt, &mut *outflow] {
             table[..from].fill(0.0);
         }
-        let out = Out {
-            swe: next_swe,
-            net_melt,
-            outflow,
-            bare_ground_rain,
-        };
+        let out = Out { swe: next_swe, net_melt, outflow, bare_ground_rain };
         match (&mut block.detail, is_wet) {
             (Some(detail), _) => {
                 state.melt[..from].fill(0.0);
@@ -218,11 +194,7 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
         lanes.mix_row(swe, with_snow, mean_swe);
         lanes.mix_row(net_melt, from, mean_net_melt);
         lanes.mix_row(outflow, from, mean_outflow);
-        lanes.mix_row(
-            bare_ground_rain,
-            if is_wet { 0 } else { width },
-            mean_bare_ground_rain,
-        );
+        lanes.mix_row(bare_ground_rain, if is_wet { 0 } else { width }, mean_bare_ground_rain);
     }
     let end = weather.mean_c.len() * row_width;
     let (swe, mean_swe) = block.swe_mm[end..end + row_width].split_at_mut(width);
@@ -270,25 +242,9 @@ fn split(
     factor: &[f64],
     snow_fraction: impl Fn(f64, f64, f64) -> f64,
 ) {
-    let State {
-        snow,
-        rain,
-        input,
-        mean,
-        ..
-    } = state;
+    let State { snow, rain, input, mean, .. } = state;
     let (warm, per_c) = (&lanes.phase_warm_c, &lanes.phase_per_c);
-    split_row(
-        snow,
-        rain,
-        input,
-        mean,
-        warm,
-        per_c,
-        factor,
-        precipitation_mm,
-        snow_fraction,
-    );
+    split_row(snow, rain, input, mean, warm, per_c, factor, precipitation_mm, snow_fraction);
 }
 
 #[inline(always)]
@@ -309,12 +265,7 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool>(
     degree_day_factor: &[f64],
     out: Out<'_>,
 ) {
-    let Out {
-        swe,
-        net_melt,
-        outflow,
-        bare_ground_rain,
-    } = out;
+    let Out { swe, net_melt, outflow, bare_ground_rain } = out;
     store_row::<IS_WET, WITH_DETAIL>(
         &mut state.ice[from..],
         &mut state.liquid[from..],

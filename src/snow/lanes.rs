@@ -165,10 +165,9 @@ impl Lanes {
         }
         self.melt_base_c[lane] = spec.snow.melt_base_c;
         (self.phase_warm_c[lane], self.phase_per_c[lane]) = match spec.snow.rain_snow {
-            PhaseRule::Linear {
-                snow_only_below_c,
-                rain_only_above_c,
-            } => (rain_only_above_c, 1.0 / (rain_only_above_c - snow_only_below_c)),
+            PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => {
+                (rain_only_above_c, 1.0 / (rain_only_above_c - snow_only_below_c))
+            }
             PhaseRule::Step { half_snow_at_c } => (half_snow_at_c, 0.0),
         };
         self.holding_fraction[lane] = spec.snow.liquid_holding_fraction;

@@ -40,12 +40,7 @@ pub(super) fn close(
     if open_mm.abs() <= allowed_mm {
         Ok(())
     } else {
-        Err(OpenLedger {
-            lane,
-            open_mm,
-            input_mm,
-            accounted_mm,
-        })
+        Err(OpenLedger { lane, open_mm, input_mm, accounted_mm })
     }
 }
 
@@ -58,10 +53,7 @@ mod tests {
         assert!(close(0, 800.0, 500.0, 250.0, 50.0).is_ok());
         let open = close(3, 800.0, 500.0, 250.0, 50.000_01).unwrap_err();
         assert_eq!(open.lane, 3);
-        assert!(
-            close(0, 1e-10, 0.0, 0.0, 0.0).is_ok(),
-            "below 1 mm the tolerance is absolute"
-        );
+        assert!(close(0, 1e-10, 0.0, 0.0, 0.0).is_ok(), "below 1 mm the tolerance is absolute");
         assert!(close(0, f64::NAN, 0.0, 0.0, 0.0).is_err(), "NaN never closes");
     }
 }

@@ -24,20 +24,14 @@ pub enum PhaseRule {
 
 impl PhaseRule {
     /// The `linear` rule between -1 and 3 degC.
-    pub const LINEAR: Self = Self::Linear {
-        snow_only_below_c: -1.0,
-        rain_only_above_c: 3.0,
-    };
+    pub const LINEAR: Self = Self::Linear { snow_only_below_c: -1.0, rain_only_above_c: 3.0 };
     /// The `step` rule at 1 degC, the mean over land of the Northern Hemisphere (Jennings et al. 2018).
     pub const STEP: Self = Self::Step { half_snow_at_c: 1.0 };
 
     /// Share of the precipitation that falls as snow at a daily mean temperature.
     pub fn snow_fraction(self, mean_c: f64) -> f64 {
         match self {
-            Self::Linear {
-                snow_only_below_c,
-                rain_only_above_c,
-            } => super::linear_snow_fraction(
+            Self::Linear { snow_only_below_c, rain_only_above_c } => super::linear_snow_fraction(
                 mean_c,
                 rain_only_above_c,
                 1.0 / (rain_only_above_c - snow_only_below_c),
@@ -134,11 +128,8 @@ impl SnowParams {
         is_southern: bool,
     ) -> Result<(Self, Vec<Unlikely>), Vec<Fault>> {
         let mut faults = Vec::new();
-        let rule = raw.degree_rule.unwrap_or(if has_daily_range {
-            DegreeRule::Diurnal
-        } else {
-            DegreeRule::Mean
-        });
+        let rule =
+            raw.degree_rule.unwrap_or(if has_daily_range { DegreeRule::Diurnal } else { DegreeRule::Mean });
         if rule == DegreeRule::Diurnal && !has_daily_range {
             faults.push(Fault::key(
                 "snow.degree_rule",
@@ -155,39 +146,19 @@ impl SnowParams {
             degree_day_factor_highest: raw.factor_highest.unwrap_or(default.degree_day_factor_highest),
             highest_on: raw.highest_on.unwrap_or(default.highest_on),
             melt_base_c: raw.melt_base_c.unwrap_or(default.melt_base_c),
-            liquid_holding_fraction: raw
-                .liquid_holding_fraction
-                .unwrap_or(default.liquid_holding_fraction),
+            liquid_holding_fraction: raw.liquid_holding_fraction.unwrap_or(default.liquid_holding_fraction),
             refreeze_fraction: raw.refreeze_fraction.unwrap_or(default.refreeze_fraction),
         };
         snow.check_ranges(&mut faults);
-        if faults.is_empty() {
-            Ok((snow, snow.unlikely()))
-        } else {
-            Err(faults)
-        }
+        if faults.is_empty() { Ok((snow, snow.unlikely())) } else { Err(faults) }
     }
 
     fn check_ranges(&self, faults: &mut Vec<Fault>) {
         const FACTOR: &str = "mm per degC and day";
         let key = |name: &str| format!("snow.degree_day_factor_mm_per_c_day.{name}");
         let (lowest, highest) = (self.degree_day_factor_lowest, self.degree_day_factor_highest);
-        within(
-            faults,
-            &key("lowest"),
-            lowest,
-            0.0..=50.0,
-            FACTOR,
-            "snow melts 1 to 8 mm per degC and day",
-        );
-        within(
-            faults,
-            &key("highest"),
-            highest,
-            0.0..=50.0,
-            FACTOR,
-            "snow melts 1 to 8 mm per degC and day",
-        );
+        within(faults, &key("lowest"), lowest, 0.0..=50.0, FACTOR, "snow melts 1 to 8 mm per degC and day");
+        within(faults, &key("highest"), highest, 0.0..=50.0, FACTOR, "snow melts 1 to 8 mm per degC and day");
         if lowest > highest {
             faults.push(Fault::key(
                 key("lowest"),
@@ -196,54 +167,16 @@ impl SnowParams {
                 "exchange the two",
             ));
         }
-        within(
-            faults,
-            "snow.melt_base_c",
-            self.melt_base_c,
-            -20.0..=20.0,
-            "degC",
-            "0 to 1 is usual",
-        );
+        within(faults, "snow.melt_base_c", self.melt_base_c, -20.0..=20.0, "degC", "0 to 1 is usual");
         let fraction = "give a fraction, 0.1 for 10 %";
-        within(
-            faults,
-            "snow.liquid_holding_fraction",
-            self.liquid_holding_fraction,
-            0.0..=1.0,
-            "",
-            fraction,
-        );
-        within(
-            faults,
-            "snow.refreeze_fraction",
-            self.refreeze_fraction,
-            0.0..=1.0,
-            "",
-            fraction,
-        );
+        within(faults, "snow.liquid_holding_fraction", self.liquid_holding_fraction, 0.0..=1.0, "", fraction);
+        within(faults, "snow.refreeze_fraction", self.refreeze_fraction, 0.0..=1.0, "", fraction);
         match self.rain_snow {
-            PhaseRule::Linear {
-                snow_only_below_c,
-                rain_only_above_c,
-            } => {
+            PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => {
                 let mend = "a few degrees around 1 degC are usual";
                 let key = |name: &str| format!("snow.rain_snow.{name}");
-                within(
-                    faults,
-                    &key("snow_only_below_c"),
-                    snow_only_below_c,
-                    -20.0..=20.0,
-                    "degC",
-                    mend,
-                );
-                within(
-                    faults,
-                    &key("rain_only_above_c"),
-                    rain_only_above_c,
-                    -20.0..=20.0,
-                    "degC",
-                    mend,
-                );
+                within(faults, &key("snow_only_below_c"), snow_only_below_c, -20.0..=20.0, "degC", mend);
+                within(faults, &key("rain_only_above_c"), rain_only_above_c, -20.0..=20.0, "degC", mend);
                 if snow_only_below_c >= rain_only_above_c {
                     faults.push(Fault::key(
                         key("rain_only_above_c"),
@@ -255,14 +188,7 @@ impl SnowParams {
             }
             PhaseRule::Step { half_snow_at_c } => {
                 let mend = "-0.4 to 2.4 degC holds 95 % of stations";
-                within(
-                    faults,
-                    "snow.rain_snow.half_snow_at_c",
-                    half_snow_at_c,
-                    -20.0..=20.0,
-                    "degC",
-                    mend,
-                );
+                within(faults, "snow.rain_snow.half_snow_at_c", half_snow_at_c, -20.0..=20.0, "degC", mend);
             }
         }
     }
@@ -280,10 +206,9 @@ impl SnowParams {
             ));
         }
         let half_snow_c = match self.rain_snow {
-            PhaseRule::Linear {
-                snow_only_below_c,
-                rain_only_above_c,
-            } => (snow_only_below_c + rain_only_above_c) / 2.0,
+            PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => {
+                (snow_only_below_c + rain_only_above_c) / 2.0
+            }
             PhaseRule::Step { half_snow_at_c } => half_snow_at_c,
         };
         if !(-0.4..=2.4).contains(&half_snow_c) {

@@ -42,10 +42,7 @@ pub(super) fn diurnal_degrees_row(
 
 /// Rain and snow of every lane, and its part of the ledger.
 #[inline(always)]
-#[expect(
-    clippy::too_many_arguments,
-    reason = "a row a parameter, see the top of this file"
-)]
+#[expect(clippy::too_many_arguments, reason = "a row a parameter, see the top of this file")]
 pub(super) fn split_row(
     snow: &mut [f64],
     rain: &mut [f64],
@@ -71,10 +68,7 @@ pub(super) fn split_row(
 
 /// One day of every lane: the pack, SWE as the next day begins, fluxes and the ledger.
 #[inline(always)]
-#[expect(
-    clippy::too_many_arguments,
-    reason = "a row a parameter, see the top of this file"
-)]
+#[expect(clippy::too_many_arguments, reason = "a row a parameter, see the top of this file")]
 pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool>(
     ice: &mut [f64],
     liquid: &mut [f64],
@@ -103,10 +97,7 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool>(
     let (snow, rain, mean, above, below) = (&snow[..n], &rain[..n], &mean[..n], &above[..n], &below[..n]);
     let (factor, holding, refreezing) = (&factor[..n], &holding[..n], &refreezing[..n]);
     for lane in 0..n {
-        let pack = Pack {
-            ice_mm: ice[lane],
-            liquid_mm: liquid[lane],
-        };
+        let pack = Pack { ice_mm: ice[lane], liquid_mm: liquid[lane] };
         let day = LaneDay {
             snow_mm: if IS_WET { snow[lane] } else { 0.0 },
             rain_mm: if IS_WET { rain[lane] } else { 0.0 },
@@ -115,10 +106,7 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool>(
             freeze_degrees_c: below[lane],
             degree_day_factor: factor[lane],
         };
-        let lane_const = LaneConst {
-            holding_fraction: holding[lane],
-            refreeze_fraction: refreezing[lane],
-        };
+        let lane_const = LaneConst { holding_fraction: holding[lane], refreeze_fraction: refreezing[lane] };
         let (pack, fluxes) = step(pack, day, lane_const);
         ice[lane] = pack.ice_mm;
         liquid[lane] = pack.liquid_mm;

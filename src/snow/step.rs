@@ -71,23 +71,11 @@ pub fn step(pack: Pack, day: LaneDay, lane: LaneConst) -> (Pack, Fluxes) {
 
     let liquid_mm = pack.liquid_mm + (melt_mm + rain_mm);
     let can_freeze_mm = lane.refreeze_fraction * day.degree_day_factor * day.freeze_degrees_c;
-    let refreeze_mm = if ice_mm > 0.0 {
-        smaller(can_freeze_mm, liquid_mm)
-    } else {
-        0.0
-    };
+    let refreeze_mm = if ice_mm > 0.0 { smaller(can_freeze_mm, liquid_mm) } else { 0.0 };
     let ice_mm = ice_mm + refreeze_mm;
     let liquid_mm = liquid_mm - refreeze_mm;
 
     let outflow_mm = larger(liquid_mm - lane.holding_fraction * ice_mm, 0.0);
     let liquid_mm = liquid_mm - outflow_mm;
-    (
-        Pack { ice_mm, liquid_mm },
-        Fluxes {
-            melt_mm,
-            refreeze_mm,
-            outflow_mm,
-            bare_ground_rain_mm,
-        },
-    )
+    (Pack { ice_mm, liquid_mm }, Fluxes { melt_mm, refreeze_mm, outflow_mm, bare_ground_rain_mm })
 }

@@ -105,12 +105,7 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
         TemperatureColumns::Extremes { tmin, tmax } => (tmin, tmax),
         TemperatureColumns::MeanAlone(mean) => (mean, mean),
     };
-    let mut names = vec![
-        &columns.date,
-        &tmin.column,
-        &tmax.column,
-        &columns.precipitation.column,
-    ];
+    let mut names = vec![&columns.date, &tmin.column, &tmax.column, &columns.precipitation.column];
     names.dedup();
     let mut places = Vec::new();
     let mut faults = Vec::new();
@@ -150,11 +145,7 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
         };
         let mut cell = |at: usize| number(&table, &row, at, &columns.missing, &mut tally);
         let tmin_c = cell(tmin_at).map(|value| tmin.unit.to_celsius(value));
-        let tmax_c = if tmax_at == tmin_at {
-            tmin_c
-        } else {
-            cell(tmax_at).map(|v| tmax.unit.to_celsius(v))
-        };
+        let tmax_c = if tmax_at == tmin_at { tmin_c } else { cell(tmax_at).map(|v| tmax.unit.to_celsius(v)) };
         let gauge_mm = cell(gauge_at).map(|value| columns.precipitation.unit.to_millimetres(value));
         if columns.precipitation.gauge == Gauge::Daily && gauge_mm.is_some_and(|amount| amount < 0.0) {
             tally.push(table.cell_fault(
@@ -173,9 +164,7 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
         });
         let index = (day - days.first).num_days();
         let due = days.tmin_c.len();
-        let index = usize::try_from(index)
-            .ok()
-            .filter(|index| *index >= due && *index < LONGEST_RECORD_DAYS);
+        let index = usize::try_from(index).ok().filter(|index| *index >= due && *index < LONGEST_RECORD_DAYS);
         let Some(index) = index else {
             tally.push(table.cell_fault(
                 &row,
@@ -195,11 +184,9 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
     }
     match days {
         Some(days) if tally.is_empty() => Ok(days),
-        None if tally.is_empty() => Err(vec![table.file_fault(
-            "no rows below the header",
-            "one line a day",
-            "check the file",
-        )]),
+        None if tally.is_empty() => {
+            Err(vec![table.file_fault("no rows below the header", "one line a day", "check the file")])
+        }
         _ => Err(tally.into_faults()),
     }
 }

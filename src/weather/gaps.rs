@@ -16,15 +16,9 @@ pub(super) fn fill(
     tmax_c: &[Option<f64>],
     longest_days: usize,
 ) -> (Vec<f64>, Vec<f64>, Vec<Gap>) {
-    let pairs: Vec<Option<(f64, f64)>> = tmin_c
-        .iter()
-        .zip(tmax_c)
-        .map(|(tmin, tmax)| tmin.zip(*tmax))
-        .collect();
-    let mut filled: Vec<(f64, f64)> = pairs
-        .iter()
-        .map(|pair| pair.unwrap_or((f64::NAN, f64::NAN)))
-        .collect();
+    let pairs: Vec<Option<(f64, f64)>> =
+        tmin_c.iter().zip(tmax_c).map(|(tmin, tmax)| tmin.zip(*tmax)).collect();
+    let mut filled: Vec<(f64, f64)> = pairs.iter().map(|pair| pair.unwrap_or((f64::NAN, f64::NAN))).collect();
     let mut open = Vec::new();
     let mut day = 0;
     while day < pairs.len() {
@@ -36,10 +30,7 @@ pub(super) fn fill(
         while day < pairs.len() && pairs[day].is_none() {
             day += 1;
         }
-        let gap = Gap {
-            first,
-            days: day - first,
-        };
+        let gap = Gap { first, days: day - first };
         let before = first.checked_sub(1).and_then(|before| pairs[before]);
         let after = pairs.get(day).copied().flatten();
         let (Some(before), Some(after)) = (before, after) else {
@@ -67,16 +58,7 @@ mod tests {
     #[test]
     fn short_gaps_are_straight_lines_and_edges_stay_open() {
         let tmin = [None, Some(0.0), None, Some(4.0), Some(5.0), None, None, Some(8.0)];
-        let tmax = [
-            Some(9.0),
-            Some(10.0),
-            Some(50.0),
-            Some(14.0),
-            None,
-            Some(1.0),
-            None,
-            Some(18.0),
-        ];
+        let tmax = [Some(9.0), Some(10.0), Some(50.0), Some(14.0), None, Some(1.0), None, Some(18.0)];
         let (low, high, open) = fill(&tmin, &tmax, 2);
         assert_eq!(
             (low[2], high[2]),

@@ -35,11 +35,7 @@ pub(super) fn daily_amounts(
     let mut amounts = vec![None; readings.len()];
     let mut count = GaugeCount::default();
     let mut last: Option<(usize, f64)> = None;
-    for (day, now) in readings
-        .iter()
-        .enumerate()
-        .filter_map(|(day, now)| now.map(|now| (day, now)))
-    {
+    for (day, now) in readings.iter().enumerate().filter_map(|(day, now)| now.map(|now| (day, now))) {
         let Some((last_day, highest)) = last else {
             last = Some((day, now));
             continue;
@@ -80,26 +76,12 @@ mod tests {
     /// where it was taken at the end of that day.
     #[test]
     fn running_maximum_and_reset() {
-        let readings = [
-            Some(10.0),
-            Some(9.0),
-            Some(12.0),
-            None,
-            Some(15.0),
-            Some(0.5),
-            Some(2.5),
-        ];
+        let readings = [Some(10.0), Some(9.0), Some(12.0), None, Some(15.0), Some(0.5), Some(2.5)];
         let (start, count) = daily_amounts(&readings, Reading::StartOfDay, 5.0, |day| day == 5);
         assert_eq!(start, [Some(0.0), Some(2.0), None, None, None, Some(2.0), None]);
         assert_eq!(count.resets, 1);
-        assert_eq!(
-            (count.small_falls, count.small_falls_mm, count.between_readings_mm),
-            (1, 1.0, 3.0)
-        );
+        assert_eq!((count.small_falls, count.small_falls_mm, count.between_readings_mm), (1, 1.0, 3.0));
         let (end, _) = daily_amounts(&readings, Reading::EndOfDay, 5.0, |day| day == 5);
-        assert_eq!(
-            end,
-            [None, Some(0.0), Some(2.0), None, None, Some(0.5), Some(2.0)]
-        );
+        assert_eq!(end, [None, Some(0.0), Some(2.0), None, None, Some(0.5), Some(2.0)]);
     }
 }

@@ -66,10 +66,7 @@ pub fn read(
     let crossed = uncross(&mut days.tmin_c, &mut days.tmax_c);
     let (amounts, gauge) = match columns.precipitation.gauge {
         Gauge::Daily => (days.gauge_mm, None),
-        Gauge::Accumulating {
-            reading,
-            reset_tolerance_mm,
-        } => {
+        Gauge::Accumulating { reading, reset_tolerance_mm } => {
             let is_first_day = |day: usize| {
                 let date = date_of(days.first, day + 1);
                 start.first_day(start.water_year_of(date)) == date
@@ -78,23 +75,12 @@ pub fn read(
             (amounts, Some(count))
         }
     };
-    let no_temperature: Vec<bool> = days
-        .tmin_c
-        .iter()
-        .zip(&days.tmax_c)
-        .map(|(tmin, tmax)| tmin.is_none() || tmax.is_none())
-        .collect();
-    let is_missing: Vec<bool> = no_temperature
-        .iter()
-        .zip(&amounts)
-        .map(|(missing, amount)| *missing || amount.is_none())
-        .collect();
+    let no_temperature: Vec<bool> =
+        days.tmin_c.iter().zip(&days.tmax_c).map(|(tmin, tmax)| tmin.is_none() || tmax.is_none()).collect();
+    let is_missing: Vec<bool> =
+        no_temperature.iter().zip(&amounts).map(|(missing, amount)| *missing || amount.is_none()).collect();
     let (tmin_c, tmax_c, open_gaps) = gaps::fill(&days.tmin_c, &days.tmax_c, limits.temperature_gap_days);
-    let mean_c: Vec<f64> = tmin_c
-        .iter()
-        .zip(&tmax_c)
-        .map(|(tmin, tmax)| (tmin + tmax) / 2.0)
-        .collect();
+    let mean_c: Vec<f64> = tmin_c.iter().zip(&tmax_c).map(|(tmin, tmax)| (tmin + tmax) / 2.0).collect();
 
     let screening = Screening {
         first: days.first,
@@ -126,31 +112,16 @@ pub fn read(
     let mut last_year = None;
     for year in &usable {
         let range = year.first_index..year.first_index + year.days;
-        counts.interpolated_days += no_temperature[range.clone()]
-            .iter()
-            .filter(|missing| **missing)
-            .count();
-        counts.dry_for_want_of_data_days += amounts[range.clone()]
-            .iter()
-            .filter(|amount| amount.is_none())
-            .count();
+        counts.interpolated_days += no_temperature[range.clone()].iter().filter(|missing| **missing).count();
+        counts.dry_for_want_of_data_days +=
+            amounts[range.clone()].iter().filter(|amount| amount.is_none()).count();
         let weather = range.map(|day| (tmin_c[day], tmax_c[day], amounts[day].unwrap_or(0.0)));
         let follows = last_year == Some(year.water_year - 1);
-        series.push_days(
-            year.water_year,
-            start.first_day(year.water_year),
-            follows,
-            weather,
-        );
+        series.push_days(year.water_year, start.first_day(year.water_year), follows, weather);
         last_year = Some(year.water_year);
     }
     let has_daily_range = matches!(columns.temperature, TemperatureColumns::Extremes { .. });
-    Ok(Record {
-        series,
-        skipped,
-        counts,
-        has_daily_range,
-    })
+    Ok(Record { series, skipped, counts, has_daily_range })
 }
 
 /// A minimum above the maximum cannot be: takes both as missing and counts the days.

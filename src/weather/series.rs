@@ -78,16 +78,10 @@ impl Series {
     /// Adds a year of `from` at the end; it follows on the one before it, if `follows` says so.
     pub fn push_year(&mut self, from: &Self, year: &YearSpan, follows: bool) {
         let days = year.start..year.start + year.days;
-        self.years.push(YearSpan {
-            start: self.mean_c.len(),
-            follows,
-            ..*year
-        });
+        self.years.push(YearSpan { start: self.mean_c.len(), follows, ..*year });
         self.mean_c.extend_from_slice(&from.mean_c[days.clone()]);
-        self.half_range_c
-            .extend_from_slice(&from.half_range_c[days.clone()]);
-        self.precipitation_mm
-            .extend_from_slice(&from.precipitation_mm[days.clone()]);
+        self.half_range_c.extend_from_slice(&from.half_range_c[days.clone()]);
+        self.precipitation_mm.extend_from_slice(&from.precipitation_mm[days.clone()]);
         self.month.extend_from_slice(&from.month[days.clone()]);
         self.day_of_year.extend_from_slice(&from.day_of_year[days]);
     }
@@ -100,13 +94,7 @@ impl Series {
         follows: bool,
         weather: impl ExactSizeIterator<Item = (f64, f64, f64)>,
     ) {
-        let span = YearSpan {
-            water_year,
-            first,
-            start: self.mean_c.len(),
-            days: weather.len(),
-            follows,
-        };
+        let span = YearSpan { water_year, first, start: self.mean_c.len(), days: weather.len(), follows };
         self.years.push(span);
         for ((tmin, tmax, precipitation), date) in weather.zip(first.iter_days()) {
             self.mean_c.push((tmin + tmax) / 2.0);

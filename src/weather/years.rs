@@ -19,11 +19,7 @@ pub struct Limits {
 
 impl Default for Limits {
     fn default() -> Self {
-        Self {
-            temperature_gap_days: 5,
-            missing_days_allowed: 15,
-            season_mean_departure_c: 6.0,
-        }
+        Self { temperature_gap_days: 5, missing_days_allowed: 15, season_mean_departure_c: 6.0 }
     }
 }
 
@@ -61,11 +57,7 @@ impl fmt::Display for Why {
             Self::TemperatureGap { from, days } => {
                 write!(f, "no temperatures for {days} days from {from}")
             }
-            Self::SeasonMean {
-                season,
-                mean_c,
-                median_c,
-            } => write!(
+            Self::SeasonMean { season, mean_c, median_c } => write!(
                 f,
                 "{season}-season mean temperature {mean_c:.1} degC, the record's median {median_c:.1} degC"
             ),
@@ -136,43 +128,25 @@ impl Screening<'_> {
         let outside = days_between(first_day, self.first) + days_between(record_end, end_day);
         let from = days_between(self.first, first_day);
         let to = days_between(self.first, end_day).min(self.is_missing.len());
-        let inside = self.is_missing[from..to]
-            .iter()
-            .filter(|missing| **missing)
-            .count();
+        let inside = self.is_missing[from..to].iter().filter(|missing| **missing).count();
         let mut why = Vec::new();
         if outside + inside > self.limits.missing_days_allowed {
-            why.push(Why::MissingDays {
-                days: outside + inside,
-            });
+            why.push(Why::MissingDays { days: outside + inside });
         } else if outside > 0 {
-            let gap_from = if first_day < self.first {
-                first_day
-            } else {
-                record_end
-            };
-            why.push(Why::TemperatureGap {
-                from: gap_from,
-                days: outside,
-            });
+            let gap_from = if first_day < self.first { first_day } else { record_end };
+            why.push(Why::TemperatureGap { from: gap_from, days: outside });
         }
         why.extend(
             self.open_gaps
                 .iter()
                 .filter(|gap| gap.first < to && gap.first + gap.days > from)
-                .map(|gap| Why::TemperatureGap {
-                    from: date_of(self.first, gap.first + 1),
-                    days: gap.days,
-                }),
+                .map(|gap| Why::TemperatureGap { from: date_of(self.first, gap.first + 1), days: gap.days }),
         );
         why
     }
 
     fn screen_season_means(&self, years: Vec<UsableYear>, skipped: &mut Vec<SkippedYear>) -> Vec<UsableYear> {
-        let seasons = years
-            .iter()
-            .map(|year| self.season_means(year))
-            .collect::<Vec<_>>();
+        let seasons = years.iter().map(|year| self.season_means(year)).collect::<Vec<_>>();
         let medians = [0, 1].map(|season| median(seasons.iter().map(|means| means[season]).collect()));
         let mut usable = Vec::new();
         for (year, means) in years.into_iter().zip(seasons) {
@@ -180,19 +154,12 @@ impl Screening<'_> {
                 .into_iter()
                 .zip(means.into_iter().zip(medians))
                 .filter(|(_, (mean, median))| (mean - median).abs() > self.limits.season_mean_departure_c)
-                .map(|(season, (mean_c, median_c))| Why::SeasonMean {
-                    season,
-                    mean_c,
-                    median_c,
-                })
+                .map(|(season, (mean_c, median_c))| Why::SeasonMean { season, mean_c, median_c })
                 .collect();
             if why.is_empty() {
                 usable.push(year);
             } else {
-                skipped.push(SkippedYear {
-                    water_year: year.water_year,
-                    why,
-                });
+                skipped.push(SkippedYear { water_year: year.water_year, why });
             }
         }
         usable
@@ -203,13 +170,11 @@ impl Screening<'_> {
         let cool_days = day_of_water_year(self.start.first_day(year.water_year), self.survey) - 1;
         let days = &self.mean_c[year.first_index..year.first_index + year.days];
         let (cool, warm) = days.split_at(cool_days);
-        [cool, warm].map(|part| {
-            if part.is_empty() {
-                0.0
-            } else {
-                part.iter().sum::<f64>() / part.len() as f64
-            }
-        })
+        [cool, warm].map(
+            |part| {
+                if part.is_empty() { 0.0 } else { part.iter().sum::<f64>() / part.len() as f64 }
+            },
+        )
     }
 }
 

@@ -39,18 +39,14 @@ fn rows(bencher: Bencher<'_, '_>, (bands, levels): (usize, usize)) {
     let case = Bench::new(bands, levels);
     let lanes = case.lanes();
     let mut engine = Engine::new(&lanes, false);
-    bencher
-        .counter(ItemsCount::new(case.lane_days()))
-        .bench_local(|| case.run_rows(&mut engine));
+    bencher.counter(ItemsCount::new(case.lane_days())).bench_local(|| case.run_rows(&mut engine));
 }
 
 #[divan::bench(args = CASES, sample_count = 20)]
 fn naive_loop(bencher: Bencher<'_, '_>, (bands, levels): (usize, usize)) {
     let case = Bench::new(bands, levels);
     let (bands, days) = (case.naive_bands(), case.naive_days());
-    bencher
-        .counter(ItemsCount::new(case.lane_days()))
-        .bench_local(|| run_naive(&bands, &days));
+    bencher.counter(ItemsCount::new(case.lane_days())).bench_local(|| run_naive(&bands, &days));
 }
 
 /// The best of several alternating runs of each: what disturbs a run only ever slows it down.
@@ -107,10 +103,7 @@ impl Bench {
             elevations_m: (0..bands)
                 .map(|band| 1500.0 + 1500.0 * (band as f64 + 0.5) / bands as f64)
                 .collect(),
-            changes: levels_c
-                .iter()
-                .map(|level| Warming::default().at(*level))
-                .collect(),
+            changes: levels_c.iter().map(|level| Warming::default().at(*level)).collect(),
             levels_c,
             snow: SnowParams::defaults(DegreeRule::Diurnal, false),
             series: mountain_weather(),
@@ -161,11 +154,7 @@ impl Bench {
     }
 
     fn naive_bands(&self) -> Vec<naive::Band> {
-        let PhaseRule::Linear {
-            snow_only_below_c,
-            rain_only_above_c,
-        } = self.snow.rain_snow
-        else {
+        let PhaseRule::Linear { snow_only_below_c, rain_only_above_c } = self.snow.rain_snow else {
             panic!("the default phase rule is linear");
         };
         let band = |level_c: f64, elevation_m: f64| naive::Band {
@@ -179,10 +168,7 @@ impl Bench {
             tmin_shape: [1.0; 12],
             tmax_shape: [1.0; 12],
             precipitation_change_pct_per_c: 0.0,
-            phase: naive::Phase::Linear {
-                snow_c: snow_only_below_c,
-                rain_c: rain_only_above_c,
-            },
+            phase: naive::Phase::Linear { snow_c: snow_only_below_c, rain_c: rain_only_above_c },
             degrees: naive::Degrees::Diurnal,
             factor_highest: self.snow.degree_day_factor_highest,
             factor_lowest: self.snow.degree_day_factor_lowest,
@@ -193,9 +179,7 @@ impl Bench {
         };
         let at_level = |level_c: &f64| {
             let level_c = *level_c;
-            self.elevations_m
-                .iter()
-                .map(move |elevation_m| band(level_c, *elevation_m))
+            self.elevations_m.iter().map(move |elevation_m| band(level_c, *elevation_m))
         };
         self.levels_c.iter().flat_map(at_level).collect()
     }
@@ -221,9 +205,8 @@ fn run_naive(bands: &[naive::Band], days: &[naive::Day]) -> f64 {
     let mut seen = 0.0;
     for band in bands {
         let (mut ice_mm, mut liquid_mm) = (0.0, 0.0);
-        let factors: Vec<f64> = (1..=366_u16)
-            .map(|day| naive::degree_day_factor(band, f64::from(day)))
-            .collect();
+        let factors: Vec<f64> =
+            (1..=366_u16).map(|day| naive::degree_day_factor(band, f64::from(day))).collect();
         for (number, weather) in days.iter().enumerate() {
             let factor = factors[weather.day_of_year as usize - 1];
             let result = naive::day(band, factor, ice_mm, liquid_mm, *weather);
@@ -250,13 +233,7 @@ fn mountain_weather() -> Series {
         let october = |year| NaiveDate::from_ymd_opt(year, 10, 1).expect("a date");
         let (first, end) = (october(water_year - 1), october(water_year));
         let days = usize::try_from((end - first).num_days()).expect("a year's days");
-        series.years.push(YearSpan {
-            water_year,
-            first,
-            start: series.mean_c.len(),
-            days,
-            follows: true,
-        });
+        series.years.push(YearSpan { water_year, first, start: series.mean_c.len(), days, follows: true });
         for date in first.iter_days().take(days) {
             let warmth = -libm::cos(std::f64::consts::TAU * (f64::from(date.ordinal()) - 20.0) / 365.25);
             lasting_c = 0.7 * lasting_c + 4.0 * (random.random::<f64>() + random.random::<f64>() - 1.0);

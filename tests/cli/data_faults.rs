@@ -15,7 +15,57 @@ fn cells_are_named_by_line_and_column() {
     basin.write("bands.csv", "lower_m,upper_m,area_km2\n2200,1800,40\n2200,2800,NaN\n");
     let ended = basin.run("check scenario.toml");
     assert_eq!(ended.status, 3);
-    insta::assert_snapshot!(ended.stderr, @"");
+    insta::assert_snapshot!(ended.stderr, @r#"
+error: upper_m: '1800'
+ --> bands.csv:2:6
+  |
+2 | 2200,1800,40
+  |      ^^^^ expected an upper edge above the lower
+  |
+  = help: check the two edges
+
+error: area_km2: 'NaN'
+ --> bands.csv:3:11
+  |
+3 | 2200,2800,NaN
+  |           ^^^ expected a number
+  |
+  = help: write it with a decimal point
+
+error: precip_mm: 'trace'
+ --> weather.csv:3:21
+  |
+3 | 2000-10-02,0.4,10.4,trace
+  |                     ^^^^^ expected a number or a mark for 'not measured'
+  |
+  = help: if it is such a mark, add it to 'missing' in [weather]
+
+error: date: '2000-10-02'
+ --> weather.csv:4:1
+  |
+4 | 2000-10-02,0.2,10.2,0.0
+  | ^^^^^^^^^^ expected a date after that of the line above, within 400 years of the first
+  |
+  = help: sort the lines by date and keep one line a day
+
+error: date: '24.12.2000'
+  --> weather.csv:86:1
+   |
+86 | 24.12.2000,-12.3,-2.3,6.0
+   | ^^^^^^^^^^ expected a date written as %Y-%m-%d
+   |
+   = help: state the file's own form in date = { column, format }, such as "%d/%m/%Y"
+
+error: precip_mm: '-9.0'
+   --> weather.csv:370:21
+    |
+370 | 2001-10-04,0.1,10.1,-9.0
+    |                     ^^^^ expected a daily amount of 0 or more
+    |
+    = help: if the gauge accumulates, say so with gauge = "accumulating"; else add the mark to 'missing'
+
+6 faults; nothing was run
+"#);
 }
 
 /// A column that is not there is answered with those that are.

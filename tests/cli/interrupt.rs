@@ -24,6 +24,10 @@ fn an_interrupted_study_leaves_earlier_results_whole() {
         assert!(Command::new("kill").args(["-INT", &pid]).status().unwrap().success());
         assert_eq!(child.wait().unwrap().code(), Some(130), "after {delay} ms");
         assert_eq!(basin.read("output/scenario/run.json"), before);
-        assert_eq!(std::fs::read_dir(basin.path().join("output")).unwrap().count(), 1, "nothing half-published");
+        assert_eq!(
+            std::fs::read_dir(basin.path().join("output")).unwrap().count(),
+            1,
+            "nothing half-published"
+        );
     }
 }

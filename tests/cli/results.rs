@@ -33,7 +33,8 @@ fn manifest_and_threads() {
     let one = files(&basin.path().join("on-1"));
     assert!(one == files(&basin.path().join("on-2")) && one == files(&basin.path().join("on-7")));
     let manifest: serde_json::Value = serde_json::from_str(&basin.read("on-1/run.json")).unwrap();
-    let mut named: Vec<&str> = manifest["files"].as_array().unwrap().iter().map(|f| f.as_str().unwrap()).collect();
+    let mut named: Vec<&str> =
+        manifest["files"].as_array().unwrap().iter().map(|f| f.as_str().unwrap()).collect();
     named.sort_unstable();
     assert_eq!(named, one.iter().map(|(name, _)| name.as_str()).collect::<Vec<_>>());
     assert_eq!(manifest["command"], "thawline study scenario.toml");
@@ -66,7 +67,8 @@ fn replacing_results() {
     assert!(before == files(&basin.path().join("output/scenario")));
     assert_eq!(basin.run("study scenario.toml --force").status, 0);
     assert!(!old.exists());
-    let rest: Vec<_> = fs::read_dir(basin.path().join("output")).unwrap().map(|e| e.unwrap().file_name()).collect();
+    let rest: Vec<_> =
+        fs::read_dir(basin.path().join("output")).unwrap().map(|e| e.unwrap().file_name()).collect();
     assert_eq!(rest, ["scenario"], "nothing is left beside the results");
 }
 
@@ -87,8 +89,10 @@ fn tables_are_whole() {
     let basin = Basin::new();
     basin.run("study scenario.toml --into out");
     basin.run("daily scenario.toml --into days");
-    let tables: Vec<_> =
-        files(&basin.path().join("out/tables")).into_iter().chain(files(&basin.path().join("days"))).collect();
+    let tables: Vec<_> = files(&basin.path().join("out/tables"))
+        .into_iter()
+        .chain(files(&basin.path().join("days")))
+        .collect();
     for (name, content) in tables.into_iter().filter(|(name, _)| name.ends_with(".csv")) {
         let mut reader = csv::Reader::from_reader(content.as_slice());
         let mut rows = 0;

@@ -14,7 +14,57 @@ fn all_faults_are_shown_in_their_places() {
     basin.exchange("weather.csv", "wether.csv");
     let ended = basin.run("check scenario.toml");
     assert_eq!((ended.status, ended.stdout.as_str()), (3, ""));
-    insta::assert_snapshot!(ended.stderr, @"");
+    insta::assert_snapshot!(ended.stderr, @r#"
+error: basin.latitude_deg: no 'latitude_deg'
+ --> scenario.toml:4:2
+  |
+4 | [basin]
+  |  ^^^^^ expected a number
+  |
+  = help: degrees, negative in the southern hemisphere
+
+error: 'basin.latitud_deg', which is not a key of a scenario
+ --> scenario.toml:5:1
+  |
+5 | latitud_deg = 40
+  | ^^^^^^^^^^^ expected 'latitude_deg'?
+  |
+  = help: write 'latitude_deg', or take the key out
+
+error: basin.temperature_gradient_c_per_km: 6.5
+ --> scenario.toml:7:33
+  |
+7 | temperature_gradient_c_per_km = 6.5
+  |                                 ^^^ expected a negative number, since it is colder higher up
+  |
+  = help: did you mean -6.5?
+
+error: weather.file: wether.csv: there is no such file
+  --> scenario.toml:11:8
+   |
+11 | file = "wether.csv"
+   |        ^^^^^^^^^^^^ expected a text file in UTF-8
+   |
+   = help: the path is relative to the scenario's folder
+
+error: weather.precipitation.unit: "inches"
+  --> scenario.toml:15:48
+   |
+15 | precipitation = { column = "precip_mm", unit = "inches" }
+   |                                                ^^^^^^^^ expected "mm" or "cm" or "in"
+   |
+   = help: did you mean "in"?
+
+error: warming.levels_c[2]: 2 a second time
+  --> scenario.toml:18:19
+   |
+18 | levels_c = [0, 2, 2]
+   |                   ^ expected each level once
+   |
+   = help: take one of them out
+
+6 faults; nothing was run
+"#);
 }
 
 /// Syntax faults are all shown too, and nothing else is guessed from a text that could not be read whole.
@@ -25,7 +75,113 @@ fn syntax_faults_are_shown_together() {
     basin.exchange("levels_c = [0, 2]", "levels_c = [0, 2");
     let ended = basin.run("check scenario.toml");
     assert_eq!(ended.status, 3);
-    insta::assert_snapshot!(ended.stderr, @"");
+    insta::assert_snapshot!(ended.stderr, @r#"
+error: extra `=`, expected nothing
+ --> scenario.toml:2:8
+  |
+2 | seed = = 5
+  |        ^ expected TOML: key = value, one a line, under [table] lines
+  |
+  = help: quote texts, write lists in [ ], and name each key once
+
+error: unexpected key or value, expected newline, `#`
+ --> scenario.toml:2:10
+  |
+2 | seed = = 5
+  |          ^ expected TOML: key = value, one a line, under [table] lines
+  |
+  = help: quote texts, write lists in [ ], and name each key once
+
+error: missing comma between array elements, expected `,`
+  --> scenario.toml:20:1
+   |
+20 | [realizations]
+   | ^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+error: string values must be quoted, expected literal string
+  --> scenario.toml:20:2
+   |
+20 | [realizations]
+   |  ^^^^^^^^^^^^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+error: missing comma between array elements, expected `,`
+  --> scenario.toml:21:1
+   |
+21 | count = 12
+   | ^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+error: string values must be quoted, expected literal string
+  --> scenario.toml:21:1
+   |
+21 | count = 12
+   | ^^^^^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+error: unexpected `=` in array, expected value, `]`
+  --> scenario.toml:21:7
+   |
+21 | count = 12
+   |       ^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+error: missing comma between array elements, expected `,`
+  --> scenario.toml:21:9
+   |
+21 | count = 12
+   |         ^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+error: missing comma between array elements, expected `,`
+  --> scenario.toml:22:1
+   |
+22 | years = 5
+   | ^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+error: string values must be quoted, expected literal string
+  --> scenario.toml:22:1
+   |
+22 | years = 5
+   | ^^^^^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+error: unexpected `=` in array, expected value, `]`
+  --> scenario.toml:22:7
+   |
+22 | years = 5
+   |       ^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+error: missing comma between array elements, expected `,`
+  --> scenario.toml:22:9
+   |
+22 | years = 5
+   |         ^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+error: unclosed array, expected `]`
+  --> scenario.toml:22:10
+   |
+22 | years = 5
+   |          ^ expected TOML: key = value, one a line, under [table] lines
+   |
+   = help: quote texts, write lists in [ ], and name each key once
+
+13 faults; nothing was run
+"#);
 }
 
 /// Numbers that are no numbers never reach the model.

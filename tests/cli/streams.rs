@@ -22,7 +22,12 @@ fn exit_statuses_of_the_command_line() {
         let ended = basin.run(words);
         assert_eq!(ended.status, status, "thawline {words}: {}", ended.stderr);
         if status != 0 {
-            assert_eq!(ended.stdout.is_empty(), !words.contains("--json"), "thawline {words}: {}", ended.stdout);
+            assert_eq!(
+                ended.stdout.is_empty(),
+                !words.contains("--json"),
+                "thawline {words}: {}",
+                ended.stdout
+            );
         }
     }
 }
@@ -33,7 +38,8 @@ fn help_fits_and_its_examples_name_real_commands() {
     let help = Basin::new().run("--help").stdout;
     let longest = help.lines().map(|line| line.chars().count()).max();
     assert!(longest <= Some(120), "{longest:?}");
-    let examples: Vec<&str> = help.lines().filter_map(|line| line.trim().strip_prefix("$ thawline ")).collect();
+    let examples: Vec<&str> =
+        help.lines().filter_map(|line| line.trim().strip_prefix("$ thawline ")).collect();
     assert!(examples.len() >= 3, "{help}");
     for example in examples {
         let command = example.split_whitespace().next().unwrap();
@@ -67,7 +73,10 @@ fn json_documents() {
     let failed = basin.run("study scenario.toml --json");
     let document = parse(&failed.stdout);
     assert_eq!((failed.status, failed.stderr.as_str()), (3, ""));
-    assert_eq!((document["faults"][0]["line"].as_u64(), document["exit_status"].as_u64()), (Some(2), Some(3)));
+    assert_eq!(
+        (document["faults"][0]["line"].as_u64(), document["exit_status"].as_u64()),
+        (Some(2), Some(3))
+    );
 }
 
 /// Off a terminal there are plain lines on standard error and nothing on standard output; --quiet silences success
@@ -77,7 +86,11 @@ fn plain_lines_off_a_terminal() {
     let basin = Basin::new();
     let study = basin.run("study scenario.toml");
     assert_eq!((study.status, study.stdout.as_str()), (0, ""));
-    assert!(!study.stderr.contains(['\r', '\u{1b}']) && study.stderr.lines().count() >= 3, "{}", study.stderr);
+    assert!(
+        !study.stderr.contains(['\r', '\u{1b}']) && study.stderr.lines().count() >= 3,
+        "{}",
+        study.stderr
+    );
     let quiet = basin.run("study scenario.toml --quiet");
     assert_eq!((quiet.status, quiet.stdout.as_str(), quiet.stderr.as_str()), (0, "", ""));
     basin.exchange("seed = 5", "sead = 5");

@@ -31,11 +31,17 @@ fn both_demos_speak_for_their_numbers() {
     };
     assert!(ratio(1) < 1.0 && ratio(2) > 1.0);
     let crossing = main["findings"]["basin"][0]["outweighs"]["level_c"].as_f64().unwrap();
-    assert!((crossing - (1.0 + (1.0 - ratio(1)) / (ratio(2) - ratio(1)))).abs() < 1e-12, "linear between levels");
+    assert!(
+        (crossing - (1.0 + (1.0 - ratio(1)) / (ratio(2) - ratio(1)))).abs() < 1e-12,
+        "linear between levels"
+    );
     let verdict = main["answer"]["verdict"].as_str().unwrap();
-    assert!(verdict.starts_with(&format!("From about +{crossing:.1} °C of warming on, the warming outweighs")));
+    assert!(
+        verdict.starts_with(&format!("From about +{crossing:.1} °C of warming on, the warming outweighs"))
+    );
     assert!(page.contains(verdict));
-    let mean = main["record"]["headline_by_year"].as_array().unwrap().iter().map(|y| y["value"].as_f64().unwrap());
+    let mean =
+        main["record"]["headline_by_year"].as_array().unwrap().iter().map(|y| y["value"].as_f64().unwrap());
     let (count, sum) = mean.fold((0.0, 0.0), |(count, sum), value| (count + 1.0, sum + value));
     assert!((300.0..600.0).contains(&(sum / count)), "mean 1 April SWE {}", sum / count);
 }
@@ -65,7 +71,10 @@ fn a_basin_without_snow() {
     let of = |name: &str| measures.iter().find(|m| m["measure"]["name"] == name).unwrap();
     assert_eq!(of("swe_04_01_mm")["levels"][1]["percent_change"], Value::Null);
     let melt_out = &of("melt_out_day")["levels"][0];
-    assert_eq!((melt_out["periods"]["q50"].as_str(), melt_out["periods"]["none"].as_u64()), (Some("none"), Some(12)));
+    assert_eq!(
+        (melt_out["periods"]["q50"].as_str(), melt_out["periods"]["none"].as_u64()),
+        (Some("none"), Some(12))
+    );
     assert_eq!(melt_out["years_undefined"][0], 60);
     assert!(page.contains("12 none"));
 }

@@ -22,15 +22,9 @@ fn sine_day_is_the_closed_form() {
                     error_c <= 1e-12,
                     "mean {mean_c}, half range {half_range_c}, base {base_c}: {found:?} for {expected:?}"
                 );
-                assert!(
-                    found.0 >= 0.0 && found.1 >= 0.0,
-                    "degrees are never negative: {found:?}"
-                );
+                assert!(found.0 >= 0.0 && found.1 >= 0.0, "degrees are never negative: {found:?}");
             }
         }
     }
-    assert!(
-        worst_c > 0.0,
-        "two different evaluations differ somewhere, or one of them was not run"
-    );
+    assert!(worst_c > 0.0, "two different evaluations differ somewhere, or one of them was not run");
 }

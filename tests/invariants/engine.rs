@@ -12,10 +12,7 @@ use thawline::weather::Series;
 const SAME_MM: f64 = 1e-9;
 
 fn assert_same(engine: f64, naive: f64, what: &str, day: usize) -> Result<(), TestCaseError> {
-    prop_assert!(
-        (engine - naive).abs() <= SAME_MM,
-        "{what} on day {day}: engine {engine}, naive {naive}"
-    );
+    prop_assert!((engine - naive).abs() <= SAME_MM, "{what} on day {day}: engine {engine}, naive {naive}");
     Ok(())
 }
 
@@ -68,23 +65,14 @@ fn check_lane(
                 ("SWE", block.swe_mm[at], expected.swe_mm),
                 ("net melt", block.net_melt_mm[at], net_melt),
                 ("outflow", block.outflow_mm[at], expected.outflow_mm),
-                (
-                    "bare-ground rain",
-                    block.bare_ground_rain_mm[at],
-                    expected.bare_ground_rain_mm,
-                ),
+                ("bare-ground rain", block.bare_ground_rain_mm[at], expected.bare_ground_rain_mm),
             ] {
                 assert_same(engine, naive, what, day + 1)?;
             }
         }
         let last = &naive[year.start + year.days - 1];
         let end = block.swe_mm[year.days * block.width + lane];
-        assert_same(
-            end,
-            last.ice_mm + last.liquid_mm,
-            "SWE as the year ends",
-            year.days,
-        )?;
+        assert_same(end, last.ice_mm + last.liquid_mm, "SWE as the year ends", year.days)?;
     }
     Ok(())
 }
@@ -105,17 +93,9 @@ fn check_basin(
             let at = day * block.width + block.mixes_at + mix;
             for (what, engine, naive) in [
                 ("basin SWE", block.swe_mm[at], mean(|r| r.swe_mm)),
-                (
-                    "basin net melt",
-                    block.net_melt_mm[at],
-                    mean(|r| r.melt_mm - r.refreeze_mm),
-                ),
+                ("basin net melt", block.net_melt_mm[at], mean(|r| r.melt_mm - r.refreeze_mm)),
                 ("basin outflow", block.outflow_mm[at], mean(|r| r.outflow_mm)),
-                (
-                    "basin bare-ground rain",
-                    block.bare_ground_rain_mm[at],
-                    mean(|r| r.bare_ground_rain_mm),
-                ),
+                ("basin bare-ground rain", block.bare_ground_rain_mm[at], mean(|r| r.bare_ground_rain_mm)),
             ] {
                 assert_same(engine, naive, what, day + 1)?;
             }
@@ -126,12 +106,7 @@ fn check_basin(
             .map(|last| last.ice_mm + last.liquid_mm)
             .collect();
         let end = block.swe_mm[year.days * block.width + block.mixes_at + mix];
-        assert_same(
-            end,
-            naive::basin_mean(&at_end, areas),
-            "basin SWE as the year ends",
-            year.days,
-        )?;
+        assert_same(end, naive::basin_mean(&at_end, areas), "basin SWE as the year ends", year.days)?;
     }
     Ok(())
 }

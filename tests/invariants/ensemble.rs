@@ -56,10 +56,7 @@ impl Study {
             realizations,
             path,
         };
-        let pool = ThreadPoolBuilder::new()
-            .num_threads(threads)
-            .build()
-            .expect("threads");
+        let pool = ThreadPoolBuilder::new().num_threads(threads).build().expect("threads");
         pool.install(|| run(&plan, &Silent)).expect("a closed ledger")
     }
 }
@@ -70,15 +67,8 @@ fn bits<'a>(values: impl IntoIterator<Item = &'a f64>) -> Vec<u64> {
 
 /// The bits of all that a run keeps.
 fn all_bits(seasons: &Seasons) -> (Vec<u64>, Vec<u32>) {
-    let values = seasons
-        .basin_years
-        .iter()
-        .chain(&seasons.basin_periods)
-        .chain(&seasons.band_periods);
-    (
-        bits(values),
-        seasons.band_undefined.iter().flatten().copied().collect(),
-    )
+    let values = seasons.basin_years.iter().chain(&seasons.basin_periods).chain(&seasons.band_periods);
+    (bits(values), seasons.band_undefined.iter().flatten().copied().collect())
 }
 
 proptest! {

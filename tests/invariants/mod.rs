@@ -13,9 +13,5 @@ use proptest::test_runner::Config;
 
 /// So many random cases; a failing one is printed, small and whole, and nothing is written into the tree.
 fn cases(count: u32) -> Config {
-    Config {
-        cases: count,
-        failure_persistence: None,
-        ..Config::default()
-    }
+    Config { cases: count, failure_persistence: None, ..Config::default() }
 }

@@ -18,13 +18,7 @@ fn labelled_record(follows: &[bool]) -> Series {
         water_year += if follows { 1 } else { 3 };
         let (first, days) = (start.first_day(water_year), start.days_in(water_year));
         let at = series.mean_c.len();
-        series.years.push(YearSpan {
-            water_year,
-            first,
-            start: at,
-            days,
-            follows,
-        });
+        series.years.push(YearSpan { water_year, first, start: at, days, follows });
         for (day, date) in first.iter_days().take(days).enumerate() {
             series.mean_c.push((at + day) as f64);
             series.half_range_c.push((at + day) as f64 / 2.0);
@@ -37,13 +31,7 @@ fn labelled_record(follows: &[bool]) -> Series {
 }
 
 fn blocks(record: &Series, seed: u64, mean_run_years: f64, mean_change_sd_pct: f64) -> YearBlocks<'_> {
-    YearBlocks {
-        record,
-        seed,
-        years: 40,
-        mean_run_years,
-        mean_change_sd_pct,
-    }
+    YearBlocks { record, seed, years: 40, mean_run_years, mean_change_sd_pct }
 }
 
 fn filled(generator: &YearBlocks<'_>, realization: u32) -> Series {
@@ -123,10 +111,7 @@ fn runs_end_at_gaps() {
     for number in 0..50 {
         let made = order(&filled(&blocks(&record, 7, 1e12, 0.0), number));
         for pair in made.windows(2) {
-            let at = names
-                .iter()
-                .position(|name| *name == pair[0])
-                .expect("a year of the record");
+            let at = names.iter().position(|name| *name == pair[0]).expect("a year of the record");
             match at {
                 2 => _ = after_gap.insert(pair[1]),
                 6 => assert_eq!(pair[1], names[0], "the first year follows the last"),
@@ -134,11 +119,7 @@ fn runs_end_at_gaps() {
             }
         }
     }
-    assert_eq!(
-        after_gap.len(),
-        names.len(),
-        "after a gap a run starts at any year: {after_gap:?}"
-    );
+    assert_eq!(after_gap.len(), names.len(), "after a gap a run starts at any year: {after_gap:?}");
 }
 
 /// Runs have the stated mean length. In a record of 200 years without a gap a new run goes on by chance once in 200
@@ -161,8 +142,5 @@ fn runs_have_their_mean_length() {
     }
     let share = breaks as f64 / steps as f64;
     let expected = 0.25 * (1.0 - 1.0 / 200.0);
-    assert!(
-        (share - expected).abs() < 0.011,
-        "{share} of the steps start a run, {expected} expected"
-    );
+    assert!((share - expected).abs() < 0.011, "{share} of the steps start a run, {expected} expected");
 }

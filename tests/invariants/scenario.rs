@@ -170,12 +170,8 @@ impl Climate {
         let coldest_day = if self.is_southern { 196.0 } else { 15.0 };
         let angle = std::f64::consts::TAU * (f64::from(date.ordinal()) - coldest_day) / 365.25;
         let noise_c = self.noise_c * (random.random::<f64>() + random.random::<f64>() - 1.0) * 2.0;
-        series
-            .mean_c
-            .push(self.mean_c - self.swing_c * libm::cos(angle) + noise_c);
-        series
-            .half_range_c
-            .push(self.half_range_c * random.random::<f64>());
+        series.mean_c.push(self.mean_c - self.swing_c * libm::cos(angle) + noise_c);
+        series.half_range_c.push(self.half_range_c * random.random::<f64>());
         let is_wet = random.random::<f64>() < self.wet_chance;
         let amount_mm = -self.wet_day_mm * libm::log(1.0 - random.random::<f64>());
         series.precipitation_mm.push(if is_wet { amount_mm } else { 0.0 });
@@ -205,10 +201,7 @@ impl Scenario {
 
     /// The changes of the scenario's levels.
     pub fn changes(&self) -> Vec<MonthlyChange> {
-        self.levels_c
-            .iter()
-            .map(|level_c| self.warming.at(*level_c))
-            .collect()
+        self.levels_c.iter().map(|level_c| self.warming.at(*level_c)).collect()
     }
 
     /// Runs the engine with all detail and hands over a copy of every year.
@@ -219,9 +212,7 @@ impl Scenario {
             if !year.follows {
                 engine.restart();
             }
-            let block = engine
-                .year(series.view(year))
-                .expect("the engine's own ledger is closed");
+            let block = engine.year(series.view(year)).expect("the engine's own ledger is closed");
             blocks.push(block.clone());
         }
         blocks
@@ -241,16 +232,10 @@ impl Scenario {
             tmax_shape: self.warming.tmax_monthly_shape,
             precipitation_change_pct_per_c: self.warming.precipitation_change_pct_per_c,
             phase: match self.snow.rain_snow {
-                PhaseRule::Linear {
-                    snow_only_below_c,
-                    rain_only_above_c,
-                } => naive::Phase::Linear {
-                    snow_c: snow_only_below_c,
-                    rain_c: rain_only_above_c,
-                },
-                PhaseRule::Step { half_snow_at_c } => naive::Phase::Step {
-                    threshold_c: half_snow_at_c,
-                },
+                PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => {
+                    naive::Phase::Linear { snow_c: snow_only_below_c, rain_c: rain_only_above_c }
+                }
+                PhaseRule::Step { half_snow_at_c } => naive::Phase::Step { threshold_c: half_snow_at_c },
             },
             degrees: match self.snow.degree_rule {
                 DegreeRule::Mean => naive::Degrees::Mean,

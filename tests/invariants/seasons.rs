@@ -22,9 +22,7 @@ fn number(when: When) -> f64 {
 
 /// One column of a table of the block, day by day.
 fn column_of(block: &YearBlock, table: &[f64], column: usize) -> Vec<f64> {
-    (0..block.days)
-        .map(|day| table[day * block.width + column])
-        .collect()
+    (0..block.days).map(|day| table[day * block.width + column]).collect()
 }
 
 /// Every measure of a column by its name, from the definitions.
@@ -33,11 +31,7 @@ fn expected(block: &YearBlock, column: usize, settings: &SeasonSettings) -> Vec<
     let net_melt = column_of(block, &block.net_melt_mm, column);
     let outflow = column_of(block, &block.outflow_mm, column);
     let bare = column_of(block, &block.bare_ground_rain_mm, column);
-    let place = if column >= block.mixes_at {
-        Place::Basin
-    } else {
-        Place::Band
-    };
+    let place = if column >= block.mixes_at { Place::Basin } else { Place::Band };
     let name = |day: &MonthDay| day.to_string().replace('-', "_");
     let mut all = Vec::new();
     for survey in &settings.survey_dates {
@@ -46,10 +40,8 @@ fn expected(block: &YearBlock, column: usize, settings: &SeasonSettings) -> Vec<
     }
     for [from, to] in &settings.volume_windows {
         let days = [from, to].map(|day| day_of_water_year(block.first, *day));
-        let (outflow, bare) = (
-            naive::in_window(&outflow, days[0], days[1]),
-            naive::in_window(&bare, days[0], days[1]),
-        );
+        let (outflow, bare) =
+            (naive::in_window(&outflow, days[0], days[1]), naive::in_window(&bare, days[0], days[1]));
         let window = format!("{}_to_{}", name(from), name(to));
         all.push((format!("outflow_{window}_mm"), outflow));
         all.push((format!("water_input_{window}_mm"), outflow + bare));

@@ -18,11 +18,7 @@ impl UniformArea {
     fn of(case: &Case) -> Self {
         let mut basin = flat_basin();
         basin.temperature = TemperatureGradient::constant(-case.input::<f64>("lapse_c_per_km"));
-        Self {
-            basin,
-            lowest_m: case.input("lowest_m"),
-            highest_m: case.input("highest_m"),
-        }
+        Self { basin, lowest_m: case.input("lowest_m"), highest_m: case.input("highest_m") }
     }
 
     /// Lanes of `bands` bands of equal area, the station at the foot, a group for each change.
@@ -48,18 +44,11 @@ impl UniformArea {
 pub fn melt_over_bands(case: &Case) {
     let area = UniformArea::of(case);
     let snow = plain_snow(case);
-    let series = one_year(
-        case.input("pack_mm"),
-        &[case.input("mean_at_foot_c")],
-        &[0.0],
-        &[0.0],
-    );
+    let series = one_year(case.input("pack_mm"), &[case.input("mean_at_foot_c")], &[0.0], &[0.0]);
     let melts = case.input::<Vec<usize>>("bands").into_iter().map(|bands| {
         let lanes = area.lanes(bands, &[MonthlyChange::NONE], &snow);
         let mut engine = Engine::new(&lanes, false);
-        let block = engine
-            .year(series.view(&series.years[0]))
-            .expect("a closed ledger");
+        let block = engine.year(series.view(&series.years[0])).expect("a closed ledger");
         block.net_melt_mm[block.width + block.mixes_at]
     });
     case.check("basin_melt_mm", &melts.collect::<Vec<_>>());
@@ -85,15 +74,10 @@ pub fn season_over_bands(case: &Case) {
     let peaks: Vec<f64> = mixes().map(|mix| column("peak_swe_mm", mix)).collect();
     let storage: Vec<f64> = mixes().map(|mix| season.survey_mm(mix)).collect();
     case.check("mean_of_band_peaks_mm", &band_peaks);
-    case.check(
-        "mean_of_band_peaks_change_pct",
-        &closed_season::changes_pct(&band_peaks),
-    );
+    case.check("mean_of_band_peaks_change_pct", &closed_season::changes_pct(&band_peaks));
     case.check("storage_mm", &storage);
     case.check("storage_change_pct", &closed_season::changes_pct(&storage));
     case.check("basin_peak_mm", &peaks);
-    let days: Vec<f64> = mixes()
-        .map(|mix| season.days_after_coldest("peak_day", mix))
-        .collect();
+    let days: Vec<f64> = mixes().map(|mix| season.days_after_coldest("peak_day", mix)).collect();
     case.check("basin_peak_days_after_coldest", &days);
 }

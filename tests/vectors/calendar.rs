@@ -21,12 +21,7 @@ pub fn water_year_days(case: &Case) {
         .collect();
     for (text, day) in dates.iter().zip(&days) {
         let date = date_of(first, *day as usize);
-        assert_eq!(
-            date.format("%m-%d").to_string(),
-            *text,
-            "{}: and back again",
-            case.id
-        );
+        assert_eq!(date.format("%m-%d").to_string(), *text, "{}: and back again", case.id);
         assert_eq!(start().water_year_of(date), water_year, "{}: {date}", case.id);
     }
     let new_year = day_of_water_year(first, MonthDay::new(1, 1).expect("a day")) as f64;
@@ -64,20 +59,12 @@ pub fn melt_dates(case: &Case) {
         bare_ground_rain_mm: vec![0.0; DAYS],
         detail: None,
     };
-    let settings = SeasonSettings {
-        water_year_starts: start(),
-        survey_dates: Vec::new(),
-        volume_windows: Vec::new(),
-    };
+    let settings =
+        SeasonSettings { water_year_starts: start(), survey_dates: Vec::new(), volume_windows: Vec::new() };
     let measures = Measures::new(settings);
     let mut values = vec![0.0; measures.list().len()];
     measures.take(&mut block, &mut values);
-    for measure in [
-        "outflow_centroid_day",
-        "melt_d10_day",
-        "melt_d50_day",
-        "melt_d90_day",
-    ] {
+    for measure in ["outflow_centroid_day", "melt_d10_day", "melt_d50_day", "melt_d90_day"] {
         let at = measures.list().iter().position(|listed| listed.name == measure);
         case.check(measure, &[values[at.expect("a measure of that name")]]);
     }

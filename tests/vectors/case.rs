@@ -50,11 +50,7 @@ pub fn read(text: &str) -> Vec<Case> {
     let file: File = toml::from_str(text).expect("a file of vectors");
     for case in &file.case {
         let words = [&case.id, &case.source, &case.why];
-        assert!(
-            words.iter().all(|text| !text.is_empty()),
-            "{}: no source or reason",
-            case.id
-        );
+        assert!(words.iter().all(|text| !text.is_empty()), "{}: no source or reason", case.id);
     }
     file.case
 }
@@ -62,18 +58,13 @@ pub fn read(text: &str) -> Vec<Case> {
 impl Case {
     /// An input by its name.
     pub fn input<T: DeserializeOwned>(&self, name: &str) -> T {
-        self.input_or_none(name)
-            .unwrap_or_else(|| panic!("{}: no input '{name}'", self.id))
+        self.input_or_none(name).unwrap_or_else(|| panic!("{}: no input '{name}'", self.id))
     }
 
     /// An input that may be left out.
     pub fn input_or_none<T: DeserializeOwned>(&self, name: &str) -> Option<T> {
         let value = self.input.get(name)?.clone();
-        Some(
-            value
-                .try_into()
-                .unwrap_or_else(|error| panic!("{}: '{name}': {error}", self.id)),
-        )
+        Some(value.try_into().unwrap_or_else(|error| panic!("{}: '{name}': {error}", self.id)))
     }
 
     /// Compares what the program gave with the values expected under a name, if any are.
@@ -82,16 +73,9 @@ impl Case {
             return;
         };
         self.asked.borrow_mut().insert(name.to_owned());
-        let expected: Vec<f64> = expected
-            .clone()
-            .try_into()
-            .unwrap_or_else(|error| panic!("{name}: {error}"));
-        assert_eq!(
-            found.len(),
-            expected.len(),
-            "{}: {name}: {found:?} for {expected:?}",
-            self.id
-        );
+        let expected: Vec<f64> =
+            expected.clone().try_into().unwrap_or_else(|error| panic!("{name}: {error}"));
+        assert_eq!(found.len(), expected.len(), "{}: {name}: {found:?} for {expected:?}", self.id);
         for (found, expected) in found.iter().zip(&expected) {
             let allowed = self.tolerance * if self.is_relative { expected.abs() } else { 1.0 };
             assert!(
@@ -108,17 +92,8 @@ impl Case {
     /// Fails where something is expected that the runner does not give.
     pub fn assert_all_asked(&self) {
         let asked = self.asked.borrow();
-        let forgotten: Vec<&String> = self
-            .expected
-            .keys()
-            .filter(|name| !asked.contains(*name))
-            .collect();
-        assert!(
-            forgotten.is_empty(),
-            "{}: '{}' does not give {forgotten:?}",
-            self.id,
-            self.run
-        );
+        let forgotten: Vec<&String> = self.expected.keys().filter(|name| !asked.contains(*name)).collect();
+        assert!(forgotten.is_empty(), "{}: '{}' does not give {forgotten:?}", self.id, self.run);
         assert!(!asked.is_empty(), "{}: expects nothing", self.id);
     }
 }

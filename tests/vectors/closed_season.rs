@@ -32,13 +32,7 @@ pub fn snow_and_weather(case: &Case) -> (SnowParams, Series) {
         mean_c - swing_c * libm::cos(std::f64::consts::TAU * days_after_coldest / DAYS as f64)
     };
     let dates = || first_day().iter_days().take(DAYS);
-    let span = YearSpan {
-        water_year: 2007,
-        first: first_day(),
-        start: 0,
-        days: DAYS,
-        follows: false,
-    };
+    let span = YearSpan { water_year: 2007, first: first_day(), start: 0, days: DAYS, follows: false };
     let series = Series {
         years: vec![span],
         mean_c: (0..DAYS).map(temperature).collect(),
@@ -71,26 +65,15 @@ impl Season {
             volume_windows: Vec::new(),
         });
         let mut engine = Engine::new(lanes, false);
-        let block = engine
-            .year(series.view(&series.years[0]))
-            .expect("a closed ledger");
+        let block = engine.year(series.view(&series.years[0])).expect("a closed ledger");
         let mut values = vec![0.0; measures.list().len() * block.width];
         measures.take(block, &mut values);
-        Self {
-            measures,
-            values,
-            width: block.width,
-            mixes_at: block.mixes_at,
-        }
+        Self { measures, values, width: block.width, mixes_at: block.mixes_at }
     }
 
     /// A measure of a column by its name.
     pub fn value(&self, name: &str, column: usize) -> f64 {
-        let at = self
-            .measures
-            .list()
-            .iter()
-            .position(|measure| measure.name == name);
+        let at = self.measures.list().iter().position(|measure| measure.name == name);
         self.values[at.unwrap_or_else(|| panic!("no measure '{name}'")) * self.width + column]
     }
 
@@ -107,10 +90,7 @@ impl Season {
 
 /// Percent changes from the first value to each of the others.
 pub fn changes_pct(values: &[f64]) -> Vec<f64> {
-    values[1..]
-        .iter()
-        .map(|value| 100.0 * (value / values[0] - 1.0))
-        .collect()
+    values[1..].iter().map(|value| 100.0 * (value / values[0] - 1.0)).collect()
 }
 
 /// One place without bands, under several levels: peak, its day, melt-out, and what warming changes.
@@ -119,14 +99,7 @@ pub fn closed_season(case: &Case) {
     let (basin, levels) = (flat_basin(), case.input::<Vec<f64>>("levels_c"));
     let changes: Vec<MonthlyChange> = levels.iter().map(|level| Warming::default().at(*level)).collect();
     let groups = changes.iter().map(|change| {
-        vec![LaneSpec {
-            basin: &basin,
-            station_m: 0.0,
-            elevation_m: 0.0,
-            change,
-            snow: &snow,
-            share: 1.0,
-        }]
+        vec![LaneSpec { basin: &basin, station_m: 0.0, elevation_m: 0.0, change, snow: &snow, share: 1.0 }]
     });
     let season = Season::run(&Lanes::new(&groups.collect::<Vec<_>>()), &series, 0);
     let of = |take: &dyn Fn(usize) -> f64| (0..levels.len()).map(take).collect::<Vec<f64>>();

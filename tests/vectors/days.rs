@@ -15,20 +15,11 @@ pub fn plain_snow(case: &Case) -> SnowParams {
     let is_diurnal = case.input_or_none::<Vec<f64>>("half_range_c").is_some();
     SnowParams {
         rain_snow: if snow_c < rain_c {
-            PhaseRule::Linear {
-                snow_only_below_c: snow_c,
-                rain_only_above_c: rain_c,
-            }
+            PhaseRule::Linear { snow_only_below_c: snow_c, rain_only_above_c: rain_c }
         } else {
-            PhaseRule::Step {
-                half_snow_at_c: snow_c,
-            }
+            PhaseRule::Step { half_snow_at_c: snow_c }
         },
-        degree_rule: if is_diurnal {
-            DegreeRule::Diurnal
-        } else {
-            DegreeRule::Mean
-        },
+        degree_rule: if is_diurnal { DegreeRule::Diurnal } else { DegreeRule::Mean },
         degree_day_factor_lowest: factor,
         degree_day_factor_highest: factor,
         highest_on: MonthDay::new(6, 21).expect("a day"),
@@ -51,26 +42,12 @@ pub fn one_year(pack_mm: f64, mean_c: &[f64], half_range_c: &[f64], precipitatio
         column
     };
     Series {
-        years: vec![YearSpan {
-            water_year: 2007,
-            first,
-            start: 0,
-            days: DAYS,
-            follows: false,
-        }],
+        years: vec![YearSpan { water_year: 2007, first, start: 0, days: DAYS, follows: false }],
         mean_c: stated(mean_c, COLD_C, COLD_C),
         half_range_c: stated(half_range_c, 0.0, 0.0),
         precipitation_mm: stated(precipitation_mm, pack_mm, 0.0),
-        month: first
-            .iter_days()
-            .take(DAYS)
-            .map(|date| date.month0() as u8)
-            .collect(),
-        day_of_year: first
-            .iter_days()
-            .take(DAYS)
-            .map(|date| date.ordinal() as u16)
-            .collect(),
+        month: first.iter_days().take(DAYS).map(|date| date.month0() as u8).collect(),
+        day_of_year: first.iter_days().take(DAYS).map(|date| date.ordinal() as u16).collect(),
     }
 }
 
@@ -97,20 +74,10 @@ fn run_one_band(case: &Case, change: &MonthlyChange) -> YearBlock {
         &or_zeros(precipitation_mm),
     );
     let (basin, snow) = (flat_basin(), plain_snow(case));
-    let spec = LaneSpec {
-        basin: &basin,
-        station_m: 0.0,
-        elevation_m: 0.0,
-        change,
-        snow: &snow,
-        share: 1.0,
-    };
+    let spec = LaneSpec { basin: &basin, station_m: 0.0, elevation_m: 0.0, change, snow: &snow, share: 1.0 };
     let lanes = Lanes::new(&[vec![spec]]);
     let mut engine = Engine::new(&lanes, true);
-    engine
-        .year(series.view(&series.years[0]))
-        .expect("a closed ledger")
-        .clone()
+    engine.year(series.view(&series.years[0])).expect("a closed ledger").clone()
 }
 
 /// The stated days of one column of the daily detail.
@@ -136,25 +103,15 @@ pub fn days(case: &Case) {
 
 /// A factor on precipitation: sums, wet days, spread.
 pub fn precipitation_factor(case: &Case) {
-    let change = MonthlyChange {
-        precipitation_factor: [case.input("factor"); 12],
-        ..MonthlyChange::NONE
-    };
+    let change = MonthlyChange { precipitation_factor: [case.input("factor"); 12], ..MonthlyChange::NONE };
     let block = run_one_band(case, &change);
     let rain_mm = stated_days(case, &block, |detail| &detail.rain_mm);
     let snow_mm = stated_days(case, &block, |detail| &detail.snow_mm);
-    let fallen: Vec<f64> = rain_mm
-        .iter()
-        .zip(&snow_mm)
-        .map(|(rain, snow)| rain + snow)
-        .collect();
+    let fallen: Vec<f64> = rain_mm.iter().zip(&snow_mm).map(|(rain, snow)| rain + snow).collect();
     let (mean, deviation) = mean_and_deviation(&fallen);
     case.check("each_mm", &fallen);
     case.check("sum_mm", &[fallen.iter().sum()]);
-    case.check(
-        "wet_days",
-        &[fallen.iter().filter(|mm| **mm > 0.0).count() as f64],
-    );
+    case.check("wet_days", &[fallen.iter().filter(|mm| **mm > 0.0).count() as f64]);
     case.check("variation", &[deviation / mean]);
 }
 
@@ -166,10 +123,7 @@ pub fn temperature_shift(case: &Case) {
     let (mean, deviation) = mean_and_deviation(&mean_c);
     case.check("mean_c", &[mean]);
     case.check("deviation_c", &[deviation]);
-    case.check(
-        "frost_days",
-        &[mean_c.iter().filter(|mean| **mean <= 0.0).count() as f64],
-    );
+    case.check("frost_days", &[mean_c.iter().filter(|mean| **mean <= 0.0).count() as f64]);
     case.check("degree_days", &[melt_mm.iter().sum()]);
 }
 

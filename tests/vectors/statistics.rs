@@ -8,10 +8,7 @@ pub fn quantiles(case: &Case) {
     let sample: Vec<f64> = case.input("sample");
     let in_order = sorted(sample.into_iter().rev());
     let levels: Vec<f64> = case.input("levels");
-    let found: Vec<f64> = levels
-        .into_iter()
-        .map(|level| quantile(&in_order, level))
-        .collect();
+    let found: Vec<f64> = levels.into_iter().map(|level| quantile(&in_order, level)).collect();
     case.check("quantiles", &found);
 }
 
@@ -21,10 +18,7 @@ pub fn two_way(case: &Case) {
     let rows: Vec<&[f64]> = table.iter().map(Vec::as_slice).collect();
     let parts = TwoWay::of(&rows).expect("a table that varies");
     let shares = parts.shares().expect("a table that varies");
-    case.check(
-        "sums_of_squares",
-        &[parts.level, parts.realization, parts.residual],
-    );
+    case.check("sums_of_squares", &[parts.level, parts.realization, parts.residual]);
     case.check("f_ratio", &[parts.f_ratio]);
     case.check("shares", &[shares.level, shares.realization, shares.residual]);
 }

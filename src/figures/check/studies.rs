@@ -41,11 +41,7 @@ impl Study<'_> {
         };
         let measures = vec![
             measure("swe_04_01_mm", "1 April SWE", Kind::AmountMm),
-            measure(
-                "melt_d50_day",
-                "day with half of the net melt done",
-                Kind::DayOfWaterYear,
-            ),
+            measure("melt_d50_day", "day with half of the net melt done", Kind::DayOfWaterYear),
             measure("melt_out_day", "melt-out", Kind::DayOfWaterYear),
         ];
         let (levels, count) = (self.levels_c.len(), self.realizations);
@@ -73,22 +69,10 @@ impl Study<'_> {
             band_undefined: Array3::from_elem((levels, 1, 3), [0, 0]),
             basin_periods,
         };
-        let band = Band {
-            lower_m: 2000.0,
-            upper_m: 3000.0,
-            area_km2: 40.0,
-            elevation_m: 2500.0,
-        };
-        let questions = Questions {
-            levels_c: self.levels_c,
-            reference: self.reference,
-            bands: &[band],
-            seed: 7,
-        };
-        Findings {
-            years: 30,
-            ..answer(&seasons, &questions)
-        }
+        let band = Band { lower_m: 2000.0, upper_m: 3000.0, area_km2: 40.0, elevation_m: 2500.0 };
+        let questions =
+            Questions { levels_c: self.levels_c, reference: self.reference, bands: &[band], seed: 7 };
+        Findings { years: 30, ..answer(&seasons, &questions) }
     }
 
     pub fn draw(&self, title: &str, month: u32) -> Vec<Svg> {
@@ -106,130 +90,25 @@ impl Study<'_> {
 pub fn studies() -> Vec<(&'static str, Study<'static>)> {
     vec![
         ("plain", PLAIN),
-        (
-            "cold",
-            Study {
-                swe: [610.0, 140.0, -9.0],
-                dates: [250.0, 12.0, -1.0],
-                ..PLAIN
-            },
-        ),
-        (
-            "rising",
-            Study {
-                swe: [430.0, 20.0, 30.0],
-                dates: [220.0, 4.0, 3.0],
-                ..PLAIN
-            },
-        ),
-        (
-            "two levels",
-            Study {
-                levels_c: &[0.0, 2.0],
-                ..PLAIN
-            },
-        ),
-        (
-            "one level",
-            Study {
-                levels_c: &[0.0],
-                ..PLAIN
-            },
-        ),
-        (
-            "colder only",
-            Study {
-                levels_c: &[-2.0, 0.0],
-                reference: 1,
-                ..PLAIN
-            },
-        ),
+        ("cold", Study { swe: [610.0, 140.0, -9.0], dates: [250.0, 12.0, -1.0], ..PLAIN }),
+        ("rising", Study { swe: [430.0, 20.0, 30.0], dates: [220.0, 4.0, 3.0], ..PLAIN }),
+        ("two levels", Study { levels_c: &[0.0, 2.0], ..PLAIN }),
+        ("one level", Study { levels_c: &[0.0], ..PLAIN }),
+        ("colder only", Study { levels_c: &[-2.0, 0.0], reference: 1, ..PLAIN }),
         (
             "nine levels",
-            Study {
-                levels_c: &[-2.0, -1.0, 0.0, 1.0, 2.0, 3.0, 4.0, 5.0, 6.0],
-                reference: 2,
-                ..PLAIN
-            },
+            Study { levels_c: &[-2.0, -1.0, 0.0, 1.0, 2.0, 3.0, 4.0, 5.0, 6.0], reference: 2, ..PLAIN },
         ),
-        (
-            "uneven levels",
-            Study {
-                levels_c: &[0.0, 0.1, 0.25, 4.0],
-                ..PLAIN
-            },
-        ),
-        (
-            "tiny",
-            Study {
-                swe: [0.3, 0.2, -0.06],
-                ..PLAIN
-            },
-        ),
-        (
-            "huge",
-            Study {
-                swe: [12_000.0, 2_000.0, -1_600.0],
-                ..PLAIN
-            },
-        ),
-        (
-            "nothing",
-            Study {
-                swe: [0.0, 0.0, 0.0],
-                undefined: [0, 60],
-                ..PLAIN
-            },
-        ),
-        (
-            "no spread",
-            Study {
-                swe: [430.0, 0.0, -50.0],
-                dates: [220.0, 0.0, -4.0],
-                ..PLAIN
-            },
-        ),
-        (
-            "one realization",
-            Study {
-                realizations: 1,
-                ..PLAIN
-            },
-        ),
-        (
-            "few realizations",
-            Study {
-                realizations: 6,
-                ..PLAIN
-            },
-        ),
-        (
-            "few not gone",
-            Study {
-                undefined: [2, 1],
-                ..PLAIN
-            },
-        ),
-        (
-            "not gone",
-            Study {
-                undefined: [5, 0],
-                ..PLAIN
-            },
-        ),
-        (
-            "hardly gone",
-            Study {
-                undefined: [40, 4],
-                ..PLAIN
-            },
-        ),
-        (
-            "shifted reference",
-            Study {
-                levels_c: &[0.5, 1.0, 1.5, 2.0],
-                ..PLAIN
-            },
-        ),
+        ("uneven levels", Study { levels_c: &[0.0, 0.1, 0.25, 4.0], ..PLAIN }),
+        ("tiny", Study { swe: [0.3, 0.2, -0.06], ..PLAIN }),
+        ("huge", Study { swe: [12_000.0, 2_000.0, -1_600.0], ..PLAIN }),
+        ("nothing", Study { swe: [0.0, 0.0, 0.0], undefined: [0, 60], ..PLAIN }),
+        ("no spread", Study { swe: [430.0, 0.0, -50.0], dates: [220.0, 0.0, -4.0], ..PLAIN }),
+        ("one realization", Study { realizations: 1, ..PLAIN }),
+        ("few realizations", Study { realizations: 6, ..PLAIN }),
+        ("few not gone", Study { undefined: [2, 1], ..PLAIN }),
+        ("not gone", Study { undefined: [5, 0], ..PLAIN }),
+        ("hardly gone", Study { undefined: [40, 4], ..PLAIN }),
+        ("shifted reference", Study { levels_c: &[0.5, 1.0, 1.5, 2.0], ..PLAIN }),
     ]
 }

@@ -46,26 +46,19 @@ impl<'a> Panel<'a> {
 
     /// Days of every quantile that is drawn.
     pub fn days(&self) -> impl Iterator<Item = f64> + '_ {
-        self.measure
-            .levels
-            .iter()
-            .flat_map(|level| quantiles(level).into_iter().filter_map(Outcome::value))
+        self.measure.levels.iter().flat_map(|level| quantiles(level).into_iter().filter_map(Outcome::value))
     }
 
     /// Width of the widest level's name, px.
     pub fn name_width(&self, findings: &Findings) -> f64 {
         let names = self.measure.levels.iter().enumerate();
-        names
-            .map(|(at, found)| NAME.width(&name(found, at == findings.reference)))
-            .fold(0.0, f64::max)
+        names.map(|(at, found)| NAME.width(&name(found, at == findings.reference))).fold(0.0, f64::max)
     }
 
     /// Width of the widest label at the right, px.
     pub fn label_width(&self) -> f64 {
         let lines = self.rows.iter().flatten();
-        lines
-            .map(|(text, lettering)| lettering.width(text))
-            .fold(0.0, f64::max)
+        lines.map(|(text, lettering)| lettering.width(text)).fold(0.0, f64::max)
     }
 
     /// Height with its heading, px.
@@ -76,11 +69,7 @@ impl<'a> Panel<'a> {
     pub fn draw(&self, sheet: &Sheet, area: &Area<'_>, findings: &Findings) -> Drawn {
         let rows_top = area.top + HEADING_PX;
         let bottom = area.top + self.height();
-        let glyph = Marking {
-            ink: INK,
-            form: self.form,
-            is_hollow: false,
-        };
+        let glyph = Marking { ink: INK, form: self.form, is_hollow: false };
         marker(sheet, (MARGIN_PX + 7.0, area.top + 15.5), glyph)?;
         let title = sentence(&self.measure.measure.title);
         let title_at = (MARGIN_PX + 20.0, area.top + 20.0);
@@ -96,13 +85,7 @@ impl<'a> Panel<'a> {
                 is_hollow: is_reference,
             };
             let y = top + ROW_PX / 2.0;
-            sheet.write(
-                &name(found, is_reference),
-                (MARGIN_PX, y),
-                NAME,
-                HPos::Left,
-                VPos::Center,
-            )?;
+            sheet.write(&name(found, is_reference), (MARGIN_PX, y), NAME, HPos::Left, VPos::Center)?;
             sheet.group("level", || row(sheet, area, found, y, marking))?;
             for (at, (text, lettering)) in lines.iter().enumerate() {
                 let place = (area.right + 16.0, y + NOTE.leading() * at as f64);
@@ -123,18 +106,12 @@ impl<'a> Panel<'a> {
         for edge in [from, to] {
             sheet.line(&[(edge, top), (edge, bottom)], Stroke::solid(EDGE, 1.0))?;
         }
-        let median = Stroke {
-            ink: INK,
-            width_px: 1.2,
-            dash_px: Some([6, 4]),
-        };
+        let median = Stroke { ink: INK, width_px: 1.2, dash_px: Some([6, 4]) };
         sheet.line(&[(middle, top), (middle, bottom)], median)?;
         let name = "9 in 10 realizations at the reference";
         let half = NOTE.width(name) / 2.0;
-        let x = ((from + to) / 2.0).clamp(
-            room_from + half,
-            (WIDTH_PX - MARGIN_PX - half).max(room_from + half),
-        );
+        let x =
+            ((from + to) / 2.0).clamp(room_from + half, (WIDTH_PX - MARGIN_PX - half).max(room_from + half));
         sheet.write(name, (x, top - 6.0), NOTE, HPos::Center, VPos::Bottom)
     }
 }
@@ -196,24 +173,18 @@ fn lines(found: &LevelFindings, is_reference: bool, starts: WaterYearStart) -> V
             lines.push((format!("median {}", day_of_month(starts, day)), LABEL));
         }
         (Outcome::Value(_), Some(shift)) => {
-            let ratio = found.signal_to_spread.map_or_else(String::new, |ratio| {
-                format!(", {} the spread", times(ratio.value))
-            });
+            let ratio = found
+                .signal_to_spread
+                .map_or_else(String::new, |ratio| format!(", {} the spread", times(ratio.value)));
             lines.push((format!("{}{ratio}", days(shift.median.value)), LABEL));
         }
         (Outcome::Value(day), None) => {
             lines.push((format!("median {}, no pair", day_of_month(starts, day)), LABEL));
         }
     }
-    for (what, count) in [
-        ("snow not gone", periods.not_gone),
-        ("nothing to time", periods.none),
-    ] {
+    for (what, count) in [("snow not gone", periods.not_gone), ("nothing to time", periods.none)] {
         if count > 0 {
-            lines.push((
-                format!("{what} in {count} of {} realizations", periods.count),
-                NOTE,
-            ));
+            lines.push((format!("{what} in {count} of {} realizations", periods.count), NOTE));
         }
     }
     lines

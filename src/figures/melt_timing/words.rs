@@ -19,10 +19,7 @@ pub(super) struct Words {
 impl Words {
     pub fn of(findings: &Findings, measures: &[&MeasureFindings], starts: WaterYearStart) -> Self {
         let ensemble = ensemble(findings);
-        let names: Vec<&str> = measures
-            .iter()
-            .map(|found| found.measure.title.as_str())
-            .collect();
+        let names: Vec<&str> = measures.iter().map(|found| found.measure.title.as_str()).collect();
         let names = sentence(&names.join(" and "));
         let years = if findings.years == 1 {
             "one year".to_owned()
@@ -38,10 +35,7 @@ impl Words {
                  of a year without 29 February.",
                 reading.caption()
             ),
-            kind_of_drawing: format!(
-                "Point-intervals of {} levels on a calendar.",
-                findings.levels_c.len()
-            ),
+            kind_of_drawing: format!("Point-intervals of {} levels on a calendar.", findings.levels_c.len()),
             description: measures
                 .iter()
                 .map(|found| described(findings, found, starts))
@@ -54,11 +48,7 @@ impl Words {
 
 fn described(findings: &Findings, measure: &MeasureFindings, starts: WaterYearStart) -> String {
     let levels = measure.levels.iter().enumerate().map(|(at, found)| {
-        let label = if at == findings.reference {
-            "reference".to_owned()
-        } else {
-            level(found.level_c)
-        };
+        let label = if at == findings.reference { "reference".to_owned() } else { level(found.level_c) };
         let values = [found.periods.q50, found.periods.q05, found.periods.q95].map(Outcome::value);
         match values {
             [Some(median), Some(early), Some(late)] => {
@@ -69,9 +59,5 @@ fn described(findings: &Findings, measure: &MeasureFindings, starts: WaterYearSt
             _ => format!("{label}: no median date"),
         }
     });
-    format!(
-        "{}: {}.",
-        sentence(&measure.measure.title),
-        levels.collect::<Vec<_>>().join("; ")
-    )
+    format!("{}: {}.", sentence(&measure.measure.title), levels.collect::<Vec<_>>().join("; "))
 }

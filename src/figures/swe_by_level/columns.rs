@@ -33,10 +33,7 @@ pub(super) fn is_to_scale(levels_c: &[f64]) -> bool {
 }
 
 fn tightest(levels_c: &[f64]) -> f64 {
-    levels_c
-        .windows(2)
-        .map(|pair| pair[1] - pair[0])
-        .fold(f64::INFINITY, f64::min)
+    levels_c.windows(2).map(|pair| pair[1] - pair[0]).fold(f64::INFINITY, f64::min)
 }
 
 impl Columns {
@@ -44,27 +41,17 @@ impl Columns {
     pub fn new(levels_c: &[f64], left: f64, right: f64) -> Self {
         let count = levels_c.len().max(1) as f64;
         let even = (right - left) / count;
-        let evenly = || {
-            (0..levels_c.len())
-                .map(|at| left + even * (at as f64 + 0.5))
-                .collect()
-        };
+        let evenly = || (0..levels_c.len()).map(|at| left + even * (at as f64 + 0.5)).collect();
         let (true, Some(first), Some(last)) = (is_to_scale(levels_c), levels_c.first(), levels_c.last())
         else {
-            return Self {
-                centres: evenly(),
-                width: even,
-            };
+            return Self { centres: evenly(), width: even };
         };
         // The outer columns need half a tightest column beside them.
         let tightest = tightest(levels_c);
         let width = (right - left) * tightest / (last - first + tightest);
         let per_degree = width / tightest;
         Self {
-            centres: levels_c
-                .iter()
-                .map(|at| left + width / 2.0 + (at - first) * per_degree)
-                .collect(),
+            centres: levels_c.iter().map(|at| left + width / 2.0 + (at - first) * per_degree).collect(),
             width,
         }
     }
@@ -82,32 +69,18 @@ impl Columns {
     /// What is written below the columns: in words where they fit, else as bare numbers with the words at the right.
     pub fn labels(&self, findings: &Findings, measure: &MeasureFindings) -> Labels {
         let in_words = Labels::new(findings, measure, true);
-        if in_words.width() + 8.0 <= self.width {
-            in_words
-        } else {
-            Labels::new(findings, measure, false)
-        }
+        if in_words.width() + 8.0 <= self.width { in_words } else { Labels::new(findings, measure, false) }
     }
 }
 
 impl Labels {
     fn new(findings: &Findings, measure: &MeasureFindings, in_words: bool) -> Self {
         let has_percent = measure.levels.iter().any(|level| level.percent_change.is_some());
-        let has_ratio = measure
-            .levels
-            .iter()
-            .any(|level| level.signal_to_spread.is_some());
-        let (mm, the_spread) = if in_words {
-            (" mm", " the spread")
-        } else {
-            ("", "")
-        };
+        let has_ratio = measure.levels.iter().any(|level| level.signal_to_spread.is_some());
+        let (mm, the_spread) = if in_words { (" mm", " the spread") } else { ("", "") };
         let of_reference = |found: &LevelFindings| {
             let value = match found.periods.q50.value() {
-                Some(median) => vec![
-                    (format!("{}{mm}", size(median)), LABEL),
-                    ("median".to_owned(), NOTE),
-                ],
+                Some(median) => vec![(format!("{}{mm}", size(median)), LABEL), ("median".to_owned(), NOTE)],
                 None => vec![("no value".to_owned(), NOTE)],
             };
             let place = (found.level_c != 0.0).then(|| (format!("at {}", level(found.level_c)), NOTE));
@@ -122,10 +95,7 @@ impl Labels {
             };
             lines.push((format!("{}{mm}", signed(shift.median.value)), LABEL));
             if has_percent {
-                lines.push((
-                    found.percent_change.map_or_else(String::new, signed_percent),
-                    LABEL,
-                ));
+                lines.push((found.percent_change.map_or_else(String::new, signed_percent), LABEL));
             }
             match found.signal_to_spread {
                 Some(ratio) => lines.push((format!("{}{the_spread}", times(ratio.value)), LABEL)),
@@ -135,13 +105,8 @@ impl Labels {
             lines
         };
         let levels = measure.levels.iter().enumerate();
-        let columns = levels.map(|(at, found)| {
-            if at == findings.reference {
-                of_reference(found)
-            } else {
-                of_level(found)
-            }
-        });
+        let columns = levels
+            .map(|(at, found)| if at == findings.reference { of_reference(found) } else { of_level(found) });
         let mut beside = Vec::new();
         if !in_words {
             beside.push((1, "mm, median change"));
@@ -149,17 +114,12 @@ impl Labels {
                 beside.push((if has_percent { 3 } else { 2 }, "the spread"));
             }
         }
-        Self {
-            columns: columns.collect(),
-            beside,
-        }
+        Self { columns: columns.collect(), beside }
     }
 
     fn width(&self) -> f64 {
         let lines = self.columns.iter().flatten();
-        lines
-            .map(|(text, lettering)| lettering.width(text))
-            .fold(0.0, f64::max)
+        lines.map(|(text, lettering)| lettering.width(text)).fold(0.0, f64::max)
     }
 
     /// Height of the tallest column of lines, px.
@@ -170,10 +130,7 @@ impl Labels {
 
     /// Writes the lines, centred below their columns.
     pub fn write(&self, sheet: &Sheet, columns: &Columns, top_px: f64) -> Drawn {
-        let right_edge = columns
-            .centres
-            .last()
-            .map_or(0.0, |centre| centre + columns.width / 2.0);
+        let right_edge = columns.centres.last().map_or(0.0, |centre| centre + columns.width / 2.0);
         for (line, text) in &self.beside {
             let place = (right_edge + 17.0, top_px + LABEL.leading() * (*line as f64 + 0.5));
             sheet.write(text, place, NOTE, HPos::Left, VPos::Center)?;

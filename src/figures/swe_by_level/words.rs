@@ -22,11 +22,8 @@ impl Words {
     pub fn of(findings: &Findings, measure: &MeasureFindings) -> Self {
         let ensemble = ensemble(findings);
         let name = sentence(&measure.measure.title);
-        let years = if findings.years == 1 {
-            "1 year".to_owned()
-        } else {
-            format!("{}-year mean", findings.years)
-        };
+        let years =
+            if findings.years == 1 { "1 year".to_owned() } else { format!("{}-year mean", findings.years) };
         let dots = findings.realizations >= DOTS;
         let reading = Reading::of(findings, &[measure], "change", dots);
         let scale = if findings.levels_c.len() < 2 || is_to_scale(&findings.levels_c) {
@@ -39,20 +36,11 @@ impl Words {
             reading.caption()
         );
         let described = measure.levels.iter().enumerate().map(|(at, found)| {
-            let label = if at == findings.reference {
-                "reference".to_owned()
-            } else {
-                level(found.level_c)
-            };
+            let label = if at == findings.reference { "reference".to_owned() } else { level(found.level_c) };
             let values = [found.periods.q50, found.periods.q05, found.periods.q95].map(Outcome::value);
             match values {
                 [Some(median), Some(low), Some(high)] => {
-                    format!(
-                        "{label}: median {} mm, 5–95 % {} to {} mm",
-                        size(median),
-                        size(low),
-                        size(high)
-                    )
+                    format!("{label}: median {} mm, 5–95 % {} to {} mm", size(median), size(low), size(high))
                 }
                 _ => format!("{label}: no value"),
             }
