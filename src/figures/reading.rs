@@ -43,7 +43,7 @@ impl Reading {
         let dots = if self.with_dots { "Each dot: 1 in 20 realizations. " } else { "" };
         let spread = if self.with_band {
             format!(
-                "The spread: from the reference median (dashed) to the edge of the grey band that the {} points to; the \
+                "Half spread: from the reference median (dashed) to the edge of the grey band that the {} points to; the \
                  band holds 9 in 10 realizations at the reference. ",
                 self.change
             )
@@ -69,7 +69,7 @@ impl Reading {
         let band = if self.with_band {
             format!(
                 "The grey band holds 5–95 % of the realizations at the reference: the precipitation spread with its own \
-                 temperatures. \u{201c}× the spread\u{201d} is the median {change} over the half of that band that it \
+                 temperatures. \u{201c}× half spread\u{201d} is the median {change} over the half of that band that it \
                  points to; above 1 the {change} outweighs the spread. "
             )
         } else {

@@ -62,6 +62,7 @@ pub struct MeasureFindings {
     /// Spread of the period value over realizations at the reference, with its own temperatures.
     pub precipitation_spread: Option<Spread>,
     /// Spread over single years at the reference; for the basin alone.
+    #[serde(skip_serializing_if = "Option::is_none")]
     pub weather_spread: Option<Spread>,
     /// From which warming on the shift outweighs the precipitation spread.
     pub outweighs: Crossing,
@@ -77,6 +78,7 @@ pub struct LevelFindings {
     /// Period values over realizations.
     pub periods: Distribution,
     /// Single years of all realizations; for the basin alone.
+    #[serde(skip_serializing_if = "Option::is_none")]
     pub single_years: Option<Distribution>,
     /// Years with none and years whose snow never went, over all realizations.
     pub years_undefined: [usize; 2],
@@ -91,6 +93,7 @@ pub struct LevelFindings {
     /// Shares of variance over reference and level.
     pub variance_shares: Option<VarianceShares>,
     /// Unpaired chances; for the basin alone.
+    #[serde(skip_serializing_if = "Option::is_none")]
     pub chances: Option<Chances>,
 }
 
@@ -219,7 +222,11 @@ impl Asked<'_> {
     fn find_level(&self, level: usize, level_c: f64) -> LevelFindings {
         LevelFindings {
             level_c,
-            periods: Distribution::of(self.periods.row(level).iter().copied()),
+            periods: if self.years.is_some() {
+                Distribution::with_dots(self.periods.row(level).iter().copied())
+            } else {
+                Distribution::of(self.periods.row(level).iter().copied())
+            },
             single_years: self
                 .years
                 .map(|years| Distribution::of(years.index_axis(Axis(0), level).iter().copied())),

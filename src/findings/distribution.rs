@@ -26,15 +26,26 @@ pub struct Distribution {
     pub q75: Outcome,
     /// 95 % quantile.
     pub q95: Outcome,
-    /// Quantiles in the middle of twenty equal shares: 2.5 %, 7.5 %, up to 97.5 %.
-    pub dots: [Outcome; DOTS],
+    /// Quantiles in the middle of twenty equal shares: 2.5 %, 7.5 %, up to 97.5 %; where they are drawn, else empty.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub dots: Vec<Outcome>,
 }
 
 impl Distribution {
     /// The distribution of the values.
     pub fn of(values: impl IntoIterator<Item = f64>) -> Self {
+        Self::of_sorted(&sorted(values))
+    }
+
+    /// The same with its dots.
+    pub fn with_dots(values: impl IntoIterator<Item = f64>) -> Self {
         let values = sorted(values);
-        let q = |p| Outcome::from(quantile(&values, p));
+        let dot = |dot: usize| Outcome::from(quantile(&values, (dot as f64 + 0.5) / DOTS as f64));
+        Self { dots: (0..DOTS).map(dot).collect(), ..Self::of_sorted(&values) }
+    }
+
+    fn of_sorted(values: &[f64]) -> Self {
+        let q = |p| Outcome::from(quantile(values, p));
         let count = |what: f64| values.iter().filter(|value| **value == what).count();
         Self {
             count: values.len(),
@@ -45,7 +56,7 @@ impl Distribution {
             q50: q(0.50),
             q75: q(0.75),
             q95: q(0.95),
-            dots: std::array::from_fn(|dot| q((dot as f64 + 0.5) / DOTS as f64)),
+            dots: Vec::new(),
         }
     }
 }

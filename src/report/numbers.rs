@@ -40,6 +40,11 @@ pub fn amount(value_mm: f64) -> String {
     format!("{} mm", fixed(value_mm, amount_decimals(value_mm)))
 }
 
+/// `−1 °C`, `1.5 °C`; the decimals that the temperature has.
+pub fn degrees(temperature_c: f64) -> String {
+    level(temperature_c).replace('+', "")
+}
+
 /// `+2 °C`; the decimals that the level has.
 pub fn level(level_c: f64) -> String {
     let decimals = (0..3).find(|d| format!("{level_c:.*}", *d).parse() == Ok(level_c)).unwrap_or(3);

@@ -57,6 +57,19 @@ pub struct Record<'a> {
     pub mean_precipitation_mm: f64,
 }
 
+impl Record<'_> {
+    /// Mean and coefficient of variation (sample standard deviation over mean) of the headline measure over the record's
+    /// years, where it is an amount above 0 in at least two years.
+    pub fn headline_mean_and_variation(&self) -> Option<[f64; 2]> {
+        let values: Vec<f64> =
+            self.years.iter().map(|year| year.values[0]).filter(|v| v.is_finite()).collect();
+        let n = values.len() as f64;
+        let mean = values.iter().sum::<f64>() / n;
+        let squares = values.iter().map(|value| (value - mean) * (value - mean)).sum::<f64>();
+        (n >= 2.0 && mean > 0.0).then(|| [mean, (squares / (n - 1.0)).sqrt() / mean])
+    }
+}
+
 /// Where a study comes from.
 #[derive(Debug, Clone, PartialEq, Serialize)]
 pub struct Origin {

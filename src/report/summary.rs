@@ -41,6 +41,8 @@ struct RecordSummary<'a> {
     years_used: usize,
     years_left_out: &'a [SkippedYear],
     mean_station_precipitation_mm: f64,
+    headline_mean: Option<f64>,
+    headline_coefficient_of_variation: Option<f64>,
     headline_by_year: Vec<HeadlineYear>,
 }
 
@@ -61,6 +63,7 @@ pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Ve
         water_year: year.water_year,
         value: year.values.first().copied().map_or(Outcome::None, Outcome::from),
     };
+    let mean_and_variation = study.record.headline_mean_and_variation();
     lines(&Summary {
         schema_version: SCHEMA_VERSION,
         program: "thawline",
@@ -81,6 +84,8 @@ pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Ve
             years_used: study.record.years.len(),
             years_left_out: study.record.skipped,
             mean_station_precipitation_mm: study.record.mean_precipitation_mm,
+            headline_mean: mean_and_variation.map(|[mean, _]| mean),
+            headline_coefficient_of_variation: mean_and_variation.map(|[_, variation]| variation),
             headline_by_year: study.record.years.iter().map(headline).collect(),
         },
         findings: study.findings,

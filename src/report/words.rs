@@ -234,6 +234,15 @@ fn could_be_hidden(findings: &Findings, at: &LevelFindings) -> Option<String> {
     ))
 }
 
+/// The same for a table: `97 ± 1 %`, `> 99 %`, `< 1 %`.
+pub fn chance_in_table(found: Chance) -> String {
+    match found.bound {
+        Some(bound) if found.estimate.value > 0.5 => format!("> {} %", fixed(100.0 * (1.0 - bound), 0)),
+        Some(bound) => format!("< {} %", fixed(100.0 * bound, 0)),
+        None => chance(found),
+    }
+}
+
 /// `97 ± 1 %`, or `above 99 %` and `below 1 %` where no realization counts for the other side.
 pub fn chance(chance: Chance) -> String {
     let percent = 100.0 * chance.estimate.value;
@@ -243,10 +252,14 @@ pub fn chance(chance: Chance) -> String {
         }
         Some(bound) => format!("0 % (95 % sure of less than {} %)", fixed(100.0 * bound, 0)),
         None => {
-            let error = chance.estimate.monte_carlo_error.map(|error| fixed(100.0 * error, 0));
-            error.map_or(format!("{} %", fixed(percent, 0)), |error| {
-                format!("{} ± {error} %", fixed(percent, 0))
-            })
+            let error = chance.estimate.monte_carlo_error.map(|error| 100.0 * error);
+            let decimals = match error {
+                Some(error) if error < 0.05 => 2,
+                Some(error) if error < 0.95 => 1,
+                _ => 0,
+            };
+            let error = error.map_or(String::new(), |error| format!(" ± {}", fixed(error, decimals)));
+            format!("{}{error} %", fixed(percent, decimals))
         }
     }
 }

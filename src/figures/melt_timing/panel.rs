@@ -175,7 +175,7 @@ fn lines(found: &LevelFindings, is_reference: bool, starts: WaterYearStart) -> V
         (Outcome::Value(_), Some(shift)) => {
             let ratio = found
                 .signal_to_spread
-                .map_or_else(String::new, |ratio| format!(", {} the spread", times(ratio.value)));
+                .map_or_else(String::new, |ratio| format!(", {} half spread", times(ratio.value)));
             lines.push((format!("{}{ratio}", days(shift.median.value)), LABEL));
         }
         (Outcome::Value(day), None) => {

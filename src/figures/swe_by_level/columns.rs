@@ -77,7 +77,7 @@ impl Labels {
     fn new(findings: &Findings, measure: &MeasureFindings, in_words: bool) -> Self {
         let has_percent = measure.levels.iter().any(|level| level.percent_change.is_some());
         let has_ratio = measure.levels.iter().any(|level| level.signal_to_spread.is_some());
-        let (mm, the_spread) = if in_words { (" mm", " the spread") } else { ("", "") };
+        let (mm, the_spread) = if in_words { (" mm", " half spread") } else { ("", "") };
         let of_reference = |found: &LevelFindings| {
             let value = match found.periods.q50.value() {
                 Some(median) => vec![(format!("{}{mm}", size(median)), LABEL), ("median".to_owned(), NOTE)],
@@ -111,7 +111,7 @@ impl Labels {
         if !in_words {
             beside.push((1, "mm, median change"));
             if has_ratio {
-                beside.push((if has_percent { 3 } else { 2 }, "the spread"));
+                beside.push((if has_percent { 3 } else { 2 }, "half spread"));
             }
         }
         Self { columns: columns.collect(), beside }

@@ -1,0 +1,64 @@
+//! The answer: the verdict, a line a level, and what it is measured with.
+
+use super::super::numbers::{DASH, days_moved, fixed, level, signed};
+use super::super::study::Study;
+use super::super::words::{Answer, chance_in_table};
+use crate::findings::{Estimate, Findings, MeasureFindings};
+use maud::{Markup, html};
+
+/// The section.
+pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
+    html! {
+        h2 { "Answer" }
+        p.verdict { (answer.verdict) }
+        ul { @for sentence in answer.amounts.iter().chain(&answer.elevation) { li { (sentence) } } }
+        @if let Some(headline) = study.findings.basin.first() { (by_level(study.findings, headline)) }
+        h3 { "How it is measured" }
+        @for sentence in &answer.yardstick { p { (sentence) } }
+    }
+}
+
+/// A row a level: how much, against what, how much earlier, and whether chance could hide it.
+fn by_level(findings: &Findings, headline: &MeasureFindings) -> Markup {
+    let moved = |name: &str, at: usize| {
+        let measure = findings.basin.iter().find(|measure| measure.measure.name == name)?;
+        Some(days_moved(measure.levels[at].shift?.median.value))
+    };
+    let or_dash = |text: Option<String>| text.unwrap_or_else(|| DASH.to_owned());
+    let years = findings.years;
+    html! {
+        div.scroll { table {
+            caption {
+                "Median changes from the reference. The last two columns compare different realizations, as if the future \
+                 drew its own weather; > and < are 95 % bounds where no pair, or every pair, counts."
+            }
+            thead { tr {
+                th scope="col" { "Warming" }
+                th scope="col" { (headline.measure.title) }
+                th scope="col" { "Times the" br; "half spread" }
+                th scope="col" { "Half of the" br; "net melt" }
+                th scope="col" { "Melt-out" }
+                th scope="col" { "Warmed " (years) "-year value" br; "below a reference one" }
+                th scope="col" { "Warmed ones that reach" br; "the reference's median" }
+            } }
+            tbody { @for (at, found) in headline.levels.iter().enumerate() { @if let Some(shift) = found.shift { tr {
+                th scope="row" { (level(found.level_c)) }
+                td {
+                    (signed(shift.median.value, super::super::numbers::amount_decimals(shift.median.value))) " mm"
+                    @if let Some(percent) = found.percent_change { " (" (signed(percent, 0)) " %)" }
+                }
+                td { (or_dash(found.signal_to_spread.map(ratio))) }
+                td { (or_dash(moved("melt_d50_day", at))) }
+                td { (or_dash(moved("melt_out_day", at))) }
+                @let chances = found.chances;
+                td { (or_dash(chances.and_then(|chances| chances.period_below_reference).map(chance_in_table))) }
+                td { (or_dash(chances.and_then(|chances| chances.reaches_reference_median).map(chance_in_table))) }
+            } } } }
+        } }
+    }
+}
+
+fn ratio(ratio: Estimate) -> String {
+    let error = ratio.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
+    format!("{}{error}", fixed(ratio.value, 2))
+}

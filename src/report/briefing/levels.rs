@@ -1,0 +1,77 @@
+//! Tables level by level: the basin's measures, and the headline by elevation.
+
+use super::super::numbers::{DASH, amount_decimals, fixed, level, outcome, signed};
+use super::super::study::Study;
+use super::super::words::period_name;
+use crate::findings::{LevelFindings, MeasureFindings};
+use crate::season::Kind;
+use maud::{Markup, html};
+
+/// The section.
+pub(super) fn section(study: &Study<'_>) -> Markup {
+    let findings = study.findings;
+    html! {
+        h2 { "Level by level" }
+        div.scroll {
+            table {
+                caption { "Basin mean, median over " (findings.realizations) " realizations of " (findings.years)
+                    "-year values; below it the median paired change from the reference, and how often the change is its half spread." }
+                thead { tr {
+                    th scope="col" { "Measure" }
+                    @for level_c in &findings.levels_c { th scope="col" { (level(*level_c)) } }
+                } }
+                tbody { @for measure in &findings.basin { tr {
+                    th scope="row" { (measure.measure.title) }
+                    @for at in &measure.levels { td { (level_cell(study, measure, at)) } }
+                } } }
+            }
+        }
+        @if let Some(headline) = findings.basin.first() {
+            h3 { "By elevation: " (period_name(findings, headline)) }
+            div.scroll {
+                table {
+                    caption { "Median over realizations; in brackets the change from the reference, where its median is 10 mm or more." }
+                    thead { tr {
+                        th scope="col" { "Band, m" } th scope="col" { "Area, km²" }
+                        @for level_c in &findings.levels_c { th scope="col" { (level(*level_c)) } }
+                    } }
+                    tbody { @for band in findings.bands.iter().rev() { @if let Some(measure) = band.measures.first() { tr {
+                        th scope="row" { (fixed(band.band.lower_m, 0)) " – " (fixed(band.band.upper_m, 0)) }
+                        td { (fixed(band.band.area_km2, 1)) }
+                        @for at in &measure.levels { td {
+                            (outcome(at.periods.q50, Kind::AmountMm, study.starts()))
+                            @if let Some(percent) = at.percent_change { " (" (signed(percent, 0)) " %)" }
+                        } }
+                    } } } }
+                }
+            }
+        }
+        p { "All of it, with ranges and Monte Carlo errors, stands in " code { "tables/" } " and " code { "summary.json" } "." }
+    }
+}
+
+fn level_cell(study: &Study<'_>, measure: &MeasureFindings, at: &LevelFindings) -> Markup {
+    let kind = measure.measure.kind;
+    let undefined = at.periods.none + at.periods.not_gone;
+    html! {
+        (outcome(at.periods.q50, kind, study.starts()))
+        @if let Some(shift) = at.shift {
+            br;
+            @match kind {
+                Kind::AmountMm => {
+                    (signed(shift.median.value, amount_decimals(shift.median.value))) " mm"
+                    @if let Some(percent) = at.percent_change { ", " (signed(percent, 0)) " %" }
+                }
+                Kind::DayOfWaterYear => { (signed(shift.median.value, 0)) " d" }
+            }
+            br;
+            @match at.signal_to_spread { Some(ratio) => { (fixed(ratio.value, 2)) " ×" } None => { (DASH) } }
+        }
+        @if undefined > 0 {
+            br;
+            @if at.periods.none > 0 { (at.periods.none) " none" }
+            @if at.periods.none > 0 && at.periods.not_gone > 0 { ", " }
+            @if at.periods.not_gone > 0 { (at.periods.not_gone) " not gone" }
+        }
+    }
+}
