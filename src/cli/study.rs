@@ -40,7 +40,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     let ready = assemble(path, shared)?;
     let target = target(&ready, shared)?;
     if !shared.force {
-        may_replace(&target).map_err(unpublished)?;
+        may_replace(&target).map_err(|error| unpublished(&error))?;
     }
     let scenario = &ready.scenario;
     let measures = Measures::new(scenario.season.clone());
@@ -65,7 +65,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     if is_interrupted() {
         return Err(Failure::Interrupted);
     }
-    publish(&files, &target, shared.force).map_err(unpublished)?;
+    publish(&files, &target, shared.force).map_err(|error| unpublished(&error))?;
     let into = target.display().to_string();
     if shared.json {
         let files = files.iter().map(|(name, _)| name.as_str()).collect();
@@ -226,6 +226,6 @@ fn check_size(ready: &Ready, measures: usize, shared: &Shared) -> Result<(), Fai
     Err(input_failure(&[fault], &file.name, &file.text, shared.is_coloured()))
 }
 
-fn unpublished(error: PublishError) -> Failure {
+fn unpublished(error: &PublishError) -> Failure {
     Failure::FileSystem(error.to_string())
 }

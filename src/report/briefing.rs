@@ -43,7 +43,7 @@ pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg]) -> Vec
                     }
                     (answer::section(study, answer))
                     @for figure in figures {
-                        figure { (PreEscaped(&figure.text)) details { summary { "How to read this figure" } p { (figure.caption) } } }
+                        figure { div.scroll { (PreEscaped(&figure.text)) } details { summary { "How to read this figure" } p { (figure.caption) } } }
                     }
                     (levels::section(study))
                     (record::section(study))

@@ -134,7 +134,7 @@ impl<'d> Section<'d> {
     }
 
     /// A table inside this one; an empty one where it was not typed.
-    pub fn section(&mut self, key: &'static str) -> Section<'d> {
+    pub fn section(&mut self, key: &'static str) -> Self {
         let path = self.path_of(key);
         let table = match self.value(key) {
             Some(DeValue::Table(table)) => Some(table),
@@ -144,11 +144,11 @@ impl<'d> Section<'d> {
             }
             None => None,
         };
-        Section::new(self.document, self.notes, path, table)
+        Self::new(self.document, self.notes, path, table)
     }
 
     /// A table that must be there.
-    pub fn required_section(&mut self, key: &'static str) -> Section<'d> {
+    pub fn required_section(&mut self, key: &'static str) -> Self {
         if !self.has(key) {
             let (found, mend) = (format!("no [{key}]"), format!("add a line [{key}] and its keys below it"));
             self.fault(Fault::key(self.path_of(key), found, format!("a table [{key}]"), mend));

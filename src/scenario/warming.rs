@@ -101,7 +101,7 @@ fn shape(section: &mut Section<'_>, key: &'static str) -> Option<[f64; 12]> {
         return None;
     }
     let mean = Warming::yearly_mean(&shape);
-    if !((mean - 1.0).abs() <= 0.005) {
+    if (mean - 1.0).abs() > 0.005 {
         section.unlikely(
             key,
             format!("averages {mean:.3} over the year's days, so a level of +1 warms the year by that"),

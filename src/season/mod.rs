@@ -1,7 +1,7 @@
 //! Season measures: what a water year comes to, for every band and basin mean at once (method, section 9).
 //!
 //! One list of families, one file a family. A family names its measures and takes them from a year block; a new one is
-//! its own file and one line of [`FAMILIES`].
+//! its own file and one line of `FAMILIES`.
 //!
 //! In rows of numbers a measure that has no value is [`NONE`], and snow that never went is [`NOT_GONE`]: ordered as the
 //! statistics want them, before and after every date. [`Outcome`] is the same, said in words.
