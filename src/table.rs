@@ -189,6 +189,11 @@ impl Tally {
         }
     }
 
+    /// What was read, or nothing where a fault took its place.
+    pub fn keep<T>(&mut self, read: Result<T, Fault>) -> Option<T> {
+        read.map_err(|fault| self.push(fault)).ok()
+    }
+
     /// Whether nothing has been added.
     pub fn is_empty(&self) -> bool {
         self.faults.is_empty()

@@ -35,13 +35,7 @@ pub fn read_bands(file: &str, text: &str) -> Result<Vec<Band>, Vec<Fault>> {
     let mut tally = Tally::default();
     let mut bands = Vec::new();
     for row in table.rows() {
-        let row = match row {
-            Ok(row) => row,
-            Err(fault) => {
-                tally.push(fault);
-                continue;
-            }
-        };
+        let Some(row) = tally.keep(row) else { continue };
         let mut number = |column: usize| {
             let value = row.cell(column).parse::<f64>().ok().filter(|value| value.is_finite());
             if value.is_none() {

@@ -6,7 +6,7 @@ use super::input::{InputFile, ScenarioFile, read_data, read_scenario};
 use crate::basin::{Basin, read_bands};
 use crate::fault::{Fault, Unlikely};
 use crate::perturb::MonthlyChange;
-use crate::scenario::{DefaultInForce, Document, Draft, Drawing, Scenario, draw, located};
+use crate::scenario::{DefaultInForce, Document, Draft, Scenario};
 use crate::snow::{LaneSpec, Lanes, correct_catch};
 use crate::weather::{Record, Series};
 use std::path::Path;
@@ -61,7 +61,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             let (unlikely, defaults) = (draft.unlikely, draft.defaults);
             Ok(Ready { scenario, basin, record, weather, unlikely, defaults, files, stem })
         }
-        _ => Err(input_failure(&faults, &file.name, &file.text, shared.is_coloured())),
+        _ => Err(Failure::input(&faults, &file.name, &file.text, shared.is_coloured())),
     }
 }
 
@@ -96,16 +96,6 @@ fn read_record_of(draft: &Draft, folder: &Path) -> Result<Option<(Record, InputF
 
 fn take<T>(result: Result<T, Vec<Fault>>, faults: &mut Vec<Fault>) -> Option<T> {
     result.map_err(|more| faults.extend(more)).ok()
-}
-
-/// Faults as a failure, drawn against the scenario's text.
-pub(super) fn input_failure(faults: &[Fault], file: &str, text: &str, is_coloured: bool) -> Failure {
-    let document = Document::parse(text);
-    let drawing = Drawing { file, text, document: &document, is_coloured };
-    Failure::Input {
-        drawn: draw(faults, &drawing),
-        faults: faults.iter().map(|fault| located(fault, &drawing)).collect(),
-    }
 }
 
 impl Ready {

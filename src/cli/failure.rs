@@ -1,9 +1,7 @@
 //! How a command fails: what is said, and with which exit status.
 
-use super::arguments::Shared;
-use super::output;
-use crate::scenario::Located;
-use serde::Serialize;
+use crate::fault::Fault;
+use crate::scenario::{Document, Drawing, Located, draw, located};
 use thiserror::Error;
 
 /// Exit statuses.
@@ -50,16 +48,6 @@ pub enum Failure {
     Ours(String),
 }
 
-#[derive(Serialize)]
-struct FailureDocument<'a> {
-    schema_version: u32,
-    program: &'static str,
-    status: &'static str,
-    exit_status: u8,
-    message: String,
-    faults: &'a [Located],
-}
-
 impl Failure {
     /// The exit status.
     pub fn exit_status(&self) -> u8 {
@@ -73,38 +61,13 @@ impl Failure {
         }
     }
 
-    /// Says what failed, on standard error, or as a document on standard output; gives the exit status.
-    pub(super) fn report(&self, shared: &Shared) -> u8 {
-        if matches!(self, Self::ClosedPipe) {
-            return self.exit_status();
+    /// Faults of the scenario or its data, drawn against the scenario's text.
+    pub(super) fn input(faults: &[Fault], file: &str, text: &str, is_coloured: bool) -> Self {
+        let document = Document::parse(text);
+        let drawing = Drawing { file, text, document: &document, is_coloured };
+        Self::Input {
+            drawn: draw(faults, &drawing),
+            faults: faults.iter().map(|fault| located(fault, &drawing)).collect(),
         }
-        if shared.json {
-            let faults = match self {
-                Self::Input { faults, .. } => faults.as_slice(),
-                _ => &[],
-            };
-            let message = match self {
-                Self::Input { faults, .. } => format!("{} faults in the scenario or its data", faults.len()),
-                other => other.to_string(),
-            };
-            let document = FailureDocument {
-                schema_version: crate::report::SCHEMA_VERSION,
-                program: "thawline",
-                status: "failed",
-                exit_status: self.exit_status(),
-                message,
-                faults,
-            };
-            return match output::print_json(&document) {
-                Ok(()) => self.exit_status(),
-                Err(failure) => failure.exit_status(),
-            };
-        }
-        let text = match self {
-            Self::Input { drawn, .. } => drawn.clone(),
-            other => format!("error: {other}\n"),
-        };
-        output::complain(&text);
-        self.exit_status()
     }
 }

@@ -49,7 +49,7 @@ pub(super) fn read_scenario(path: &Path) -> Result<ScenarioFile, Failure> {
                 expected: "a scenario: a TOML file in UTF-8".to_owned(),
                 mend: "check the path; `thawline help` shows examples".to_owned(),
             };
-            super::assemble::input_failure(&[fault], "", "", false)
+            Failure::input(&[fault], "", "", false)
         })?;
     let folder = if is_stdin { PathBuf::new() } else { path.parent().unwrap_or(Path::new("")).to_owned() };
     let stem = if is_stdin { None } else { path.file_stem().map(|stem| stem.to_string_lossy().into_owned()) };

@@ -6,6 +6,7 @@ mod check;
 mod daily;
 mod failure;
 mod input;
+mod last_words;
 mod output;
 mod progress;
 mod start;
@@ -41,6 +42,6 @@ pub fn run() -> u8 {
     };
     match result {
         Ok(()) => status::DONE,
-        Err(failure) => failure.report(&shared),
+        Err(failure) => last_words::say(&failure, &shared),
     }
 }

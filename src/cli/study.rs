@@ -1,7 +1,7 @@
 //! `thawline study`: the main job, from a scenario to a published briefing.
 
 use super::arguments::Shared;
-use super::assemble::{Ready, assemble, input_failure};
+use super::assemble::{Ready, assemble};
 use super::failure::Failure;
 use super::output;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
@@ -223,7 +223,7 @@ fn check_size(ready: &Ready, measures: usize, shared: &Shared) -> Result<(), Fai
         format!("these would take {:.0} GB: run fewer realizations, years or levels", bytes / 1e9),
     );
     let file = &ready.files[0];
-    Err(input_failure(&[fault], &file.name, &file.text, shared.is_coloured()))
+    Err(Failure::input(&[fault], &file.name, &file.text, shared.is_coloured()))
 }
 
 fn unpublished(error: &PublishError) -> Failure {

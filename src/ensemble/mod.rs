@@ -1,12 +1,14 @@
 //! Run many: every realization under every warming level, on as many threads as there are.
 
+mod plan;
 mod realization;
 mod record;
 mod run;
 mod seasons;
 mod watch;
 
+pub use plan::Plan;
 pub use record::{RecordYear, record_years};
-pub use run::{Halt, Plan, run};
+pub use run::{Halt, run};
 pub use seasons::Seasons;
 pub use watch::{Silent, Watch};

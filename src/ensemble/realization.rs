@@ -1,6 +1,6 @@
 //! One realization under every level: single years of the basin, period values of the bands.
 
-use super::run::Plan;
+use super::plan::Plan;
 use crate::season::{NONE, NOT_GONE, keeps_snow, period_value};
 use crate::snow::{Engine, OpenLedger};
 use crate::weather::Series;

@@ -1,33 +1,12 @@
 //! The run: realizations over threads, results in the order of their numbers.
 
+use super::plan::Plan;
 use super::realization::Workshop;
 use super::seasons::Seasons;
 use super::watch::Watch;
-use crate::perturb::Generator;
-use crate::season::Measures;
-use crate::snow::{Lanes, OpenLedger, Path};
+use crate::snow::OpenLedger;
 use rayon::prelude::*;
 use thiserror::Error;
-
-/// What is to be run.
-pub struct Plan<'a> {
-    /// Every band at every level, a group of lanes and a basin mean for each level.
-    pub lanes: &'a Lanes,
-    /// How many levels.
-    pub levels: usize,
-    /// The reference among them.
-    pub reference: usize,
-    /// Bands of a level.
-    pub bands: usize,
-    /// What is measured.
-    pub measures: &'a Measures,
-    /// Makes the weather.
-    pub generator: &'a dyn Generator,
-    /// How many realizations.
-    pub realizations: u32,
-    /// Compiled form of the engine's row passes.
-    pub path: Path,
-}
 
 /// Why a run has no result.
 #[derive(Debug, Clone, Copy, PartialEq, Error)]

@@ -1,7 +1,7 @@
 //! What a run keeps: single years for the basin, period values for the bands.
 
+use super::plan::Plan;
 use super::realization::Kept;
-use super::run::Plan;
 use crate::season::{Measure, period_value};
 use ndarray::{Array3, Array4, Axis};
 

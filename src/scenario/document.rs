@@ -1,6 +1,5 @@
 //! The scenario's text, parsed, with the place of every key and value.
 
-use super::section::{Notes, Section};
 use crate::fault::{Fault, Place};
 use std::collections::HashMap;
 use std::ops::Range;
@@ -72,8 +71,8 @@ impl<'t> Document<'t> {
         self.places.get(key).map_or(0..0, |place| place.key.clone())
     }
 
-    pub(super) fn top<'d>(&'d self, notes: &'d Notes) -> Section<'d> {
-        Section::new(self, notes, String::new(), Some(&self.table))
+    pub(super) fn table(&self) -> &DeTable<'t> {
+        &self.table
     }
 }
 

@@ -5,9 +5,11 @@
 //! imports this room.
 
 mod basin;
+mod days;
 mod document;
 mod draw;
 mod nearest;
+mod notes;
 mod realizations;
 mod season;
 mod section;
@@ -18,15 +20,16 @@ mod weather;
 pub use basin::BasinTyped;
 pub use document::Document;
 pub use draw::{Drawing, Located, draw, located, unlikely_lines};
+pub use notes::DefaultInForce;
 pub use realizations::RealizationsTyped;
-pub use section::DefaultInForce;
 pub use warming::WarmingTyped;
 pub use weather::WeatherTyped;
 
 use crate::fault::{Fault, Unlikely};
 use crate::season::SeasonSettings;
 use crate::snow::SnowParams;
-use section::Notes;
+use notes::Notes;
+use section::Section;
 
 /// Everything a scenario says, checked.
 #[derive(Debug, Clone)]
@@ -98,7 +101,7 @@ impl Draft {
 /// Reads a scenario and collects all its faults.
 pub fn read(document: &Document<'_>) -> Draft {
     let notes = Notes::default();
-    let mut top = document.top(&notes);
+    let mut top = Section::top(document, &notes);
     let title = top.required_text("title", "a name for the study", "add title = \"...\" at the top");
     let seed = top.whole_or("seed", 1, 0..=i64::MAX as u64);
     let basin = basin::read(top.required_section("basin"));

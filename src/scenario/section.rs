@@ -2,62 +2,10 @@
 
 use super::document::Document;
 use super::nearest::nearest;
-use super::{BasinTyped, Draft, RealizationsTyped, WarmingTyped, WeatherTyped};
-use crate::calendar::MonthDay;
+use super::notes::{DefaultInForce, Notes};
 use crate::fault::{Fault, Place, Unlikely};
-use crate::season::SeasonSettings;
-use crate::snow::SnowParams;
-use serde::Serialize;
-use std::cell::RefCell;
 use std::ops::RangeInclusive;
 use toml::de::{DeTable, DeValue};
-
-/// A default that is in force because nothing was typed.
-#[derive(Debug, Clone, PartialEq, Eq, Serialize)]
-pub struct DefaultInForce {
-    /// The scenario key.
-    pub key: String,
-    /// Its value, as one would type it.
-    pub value: String,
-}
-
-/// Collects what is met while a scenario is read.
-#[derive(Debug, Default)]
-pub(super) struct Notes {
-    pub faults: RefCell<Vec<Fault>>,
-    pub unlikely: RefCell<Vec<Unlikely>>,
-    pub defaults: RefCell<Vec<DefaultInForce>>,
-    pub named_files: RefCell<Vec<(&'static str, String)>>,
-}
-
-type Parts = (
-    Option<BasinTyped>,
-    Option<WeatherTyped>,
-    Option<SeasonSettings>,
-    Option<SnowParams>,
-    Option<WarmingTyped>,
-    Option<RealizationsTyped>,
-);
-
-impl Notes {
-    pub fn into_draft(self, title: Option<String>, seed: u64, parts: Parts) -> Draft {
-        let (basin, weather, season, snow, warming, realizations) = parts;
-        Draft {
-            title,
-            seed,
-            basin,
-            weather,
-            season,
-            snow,
-            warming,
-            realizations,
-            faults: self.faults.into_inner(),
-            unlikely: self.unlikely.into_inner(),
-            defaults: self.defaults.into_inner(),
-            named_files: self.named_files.into_inner(),
-        }
-    }
-}
 
 /// A table of the scenario while it is read.
 pub(super) struct Section<'d> {
@@ -69,7 +17,12 @@ pub(super) struct Section<'d> {
 }
 
 impl<'d> Section<'d> {
-    pub fn new(
+    /// The scenario as a whole.
+    pub fn top(document: &'d Document<'d>, notes: &'d Notes) -> Self {
+        Self::new(document, notes, String::new(), Some(document.table()))
+    }
+
+    fn new(
         document: &'d Document<'d>,
         notes: &'d Notes,
         path: String,
@@ -111,14 +64,14 @@ impl<'d> Section<'d> {
         self.table.is_some_and(|table| table.contains_key(key))
     }
 
-    fn value(&mut self, key: &'static str) -> Option<&'d DeValue<'d>> {
+    pub(super) fn value(&mut self, key: &'static str) -> Option<&'d DeValue<'d>> {
         if !self.known.contains(&key) {
             self.known.push(key);
         }
         self.table?.get(key).map(toml::Spanned::get_ref)
     }
 
-    fn wrong_type(&self, key: &str, value: &DeValue<'_>, expected: &str) {
+    pub(super) fn wrong_type(&self, key: &str, value: &DeValue<'_>, expected: &str) {
         self.fault(Fault::key(
             self.path_of(key),
             described(value),
@@ -332,54 +285,6 @@ impl<'d> Section<'d> {
         };
         self.fault(Fault::key(self.path_of(key), format!("{typed:?}"), words.join(" or "), mend));
         None
-    }
-
-    /// A day of the year written `MM-DD`, if one was typed.
-    pub fn day(&mut self, key: &'static str) -> Option<MonthDay> {
-        let text = self.text(key)?;
-        self.parse_day(key, text)
-    }
-
-    /// Reads `MM-DD`; `key` is where it was typed.
-    pub fn parse_day(&self, key: &str, text: &str) -> Option<MonthDay> {
-        let day = MonthDay::parse(text);
-        if day.is_none() {
-            self.fault(Fault::key(
-                self.path_of(key),
-                format!("{text:?}"),
-                "a day that every year has, as \"MM-DD\"",
-                "write 1 April as \"04-01\"",
-            ));
-        }
-        day
-    }
-
-    /// Lists of two days each, if they were typed.
-    pub fn day_pairs(&mut self, key: &'static str) -> Option<Vec<[MonthDay; 2]>> {
-        let value = self.value(key)?;
-        let expected = "pairs of days, [[\"04-01\", \"07-31\"]]";
-        let DeValue::Array(array) = value else {
-            self.wrong_type(key, value, expected);
-            return None;
-        };
-        let mut pairs = Vec::with_capacity(array.len());
-        for (at, element) in array.iter().enumerate() {
-            let texts: Option<Vec<&str>> = match element.get_ref() {
-                DeValue::Array(pair) => pair.iter().map(|day| day.get_ref().as_str()).collect(),
-                _ => None,
-            };
-            let place = format!("{key}[{at}]");
-            match texts.as_deref() {
-                Some([from, to]) => {
-                    let days = [self.parse_day(&place, from), self.parse_day(&place, to)];
-                    if let [Some(from), Some(to)] = days {
-                        pairs.push([from, to]);
-                    }
-                }
-                _ => self.wrong_type(&place, element.get_ref(), expected),
-            }
-        }
-        (pairs.len() == array.len()).then_some(pairs)
     }
 
     /// Faults every key that was not asked for, naming the nearest that was.

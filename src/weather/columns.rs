@@ -133,13 +133,7 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
     let mut tally = Tally::default();
     let mut days: Option<RawDays> = None;
     for row in table.rows() {
-        let row = match row {
-            Ok(row) => row,
-            Err(fault) => {
-                tally.push(fault);
-                continue;
-            }
-        };
+        let Some(row) = tally.keep(row) else { continue };
         let Some(day) = read_date(&table, &row, date, &columns.date_format, &mut tally) else {
             continue;
         };

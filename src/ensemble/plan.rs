@@ -1,0 +1,25 @@
+//! The plan of a run: what is stepped, by which weather, and what is measured.
+
+use crate::perturb::Generator;
+use crate::season::Measures;
+use crate::snow::{Lanes, Path};
+
+/// What is to be run.
+pub struct Plan<'a> {
+    /// Every band at every level, a group of lanes and a basin mean for each level.
+    pub lanes: &'a Lanes,
+    /// How many levels.
+    pub levels: usize,
+    /// The reference among them.
+    pub reference: usize,
+    /// Bands of a level.
+    pub bands: usize,
+    /// What is measured.
+    pub measures: &'a Measures,
+    /// Makes the weather.
+    pub generator: &'a dyn Generator,
+    /// How many realizations.
+    pub realizations: u32,
+    /// Compiled form of the engine's row passes.
+    pub path: Path,
+}

@@ -1,0 +1,55 @@
+//! What is met while a scenario is read: faults, what is unlikely, defaults in force, files it names.
+
+use super::{BasinTyped, Draft, RealizationsTyped, WarmingTyped, WeatherTyped};
+use crate::fault::{Fault, Unlikely};
+use crate::season::SeasonSettings;
+use crate::snow::SnowParams;
+use serde::Serialize;
+use std::cell::RefCell;
+
+/// A default that is in force because nothing was typed.
+#[derive(Debug, Clone, PartialEq, Eq, Serialize)]
+pub struct DefaultInForce {
+    /// The scenario key.
+    pub key: String,
+    /// Its value, as one would type it.
+    pub value: String,
+}
+
+/// Collects what is met while a scenario is read.
+#[derive(Debug, Default)]
+pub(super) struct Notes {
+    pub faults: RefCell<Vec<Fault>>,
+    pub unlikely: RefCell<Vec<Unlikely>>,
+    pub defaults: RefCell<Vec<DefaultInForce>>,
+    pub named_files: RefCell<Vec<(&'static str, String)>>,
+}
+
+type Parts = (
+    Option<BasinTyped>,
+    Option<WeatherTyped>,
+    Option<SeasonSettings>,
+    Option<SnowParams>,
+    Option<WarmingTyped>,
+    Option<RealizationsTyped>,
+);
+
+impl Notes {
+    pub fn into_draft(self, title: Option<String>, seed: u64, parts: Parts) -> Draft {
+        let (basin, weather, season, snow, warming, realizations) = parts;
+        Draft {
+            title,
+            seed,
+            basin,
+            weather,
+            season,
+            snow,
+            warming,
+            realizations,
+            faults: self.faults.into_inner(),
+            unlikely: self.unlikely.into_inner(),
+            defaults: self.defaults.into_inner(),
+            named_files: self.named_files.into_inner(),
+        }
+    }
+}
