@@ -162,7 +162,13 @@ impl<'a> Table<'a> {
             },
             found,
             expected: format!("one of: {}", self.header.iter().collect::<Vec<_>>().join(" | ")),
-            mend: mend.to_owned(),
+            mend: if self.header.len() == 1 {
+                "this line is taken for the header: if it is a remark, set 'comment' to the sign that remarks start \
+                 with; if it holds all the names, set 'separator'"
+                    .to_owned()
+            } else {
+                mend.to_owned()
+            },
         }
     }
 }

@@ -26,14 +26,20 @@ pub enum Place {
 /// Below this peak, timing is none, mm.
 const LEAST_PEAK_MM: f64 = 10.0;
 
+/// SWE this close is the same: ice and liquid that only change places round differently, mm.
+const SAME_MM: f64 = 1e-9;
+
 /// The year's largest S and the first day it stands.
 pub fn peak(swe_mm: &[f64]) -> (f64, usize) {
-    let (mut largest, mut on_day) = (swe_mm[0], 1);
+    let mut largest = swe_mm[0];
     for d in 1..=swe_mm.len() {
         if swe_mm[d - 1] > largest {
             largest = swe_mm[d - 1];
-            on_day = d;
         }
+    }
+    let mut on_day = 1;
+    while swe_mm[on_day - 1] < largest - SAME_MM {
+        on_day += 1;
     }
     (largest, on_day)
 }
@@ -89,11 +95,20 @@ fn first_after_peak(swe_mm: &[f64], is_met: impl Fn(f64, f64) -> bool) -> When {
     When::NotGone
 }
 
-/// Last day of the year with at least 1 mm. Snow that never melts out has none.
-pub fn last_snow(swe_mm: &[f64], place: Place) -> When {
-    let melt_out = melt_out(swe_mm, place);
-    if !matches!(melt_out, When::Day(_)) {
-        return melt_out;
+/// Last day of the year with at least 1 mm. Snow that never goes below 1 mm after the peak is not gone.
+pub fn last_snow(swe_mm: &[f64]) -> When {
+    let (largest, on_day) = peak(swe_mm);
+    if largest < LEAST_PEAK_MM {
+        return When::None;
+    }
+    let mut went = false;
+    for d in on_day..=swe_mm.len() {
+        if swe_mm[d - 1] < 1.0 {
+            went = true;
+        }
+    }
+    if !went {
+        return When::NotGone;
     }
     for d in (1..=swe_mm.len()).rev() {
         if swe_mm[d - 1] >= 1.0 {

@@ -6,6 +6,13 @@ mod gradients;
 pub use bands::{Band, read_bands};
 pub use gradients::{PrecipitationGradient, TemperatureGradient};
 
+use crate::fault::Unlikely;
+
+/// A station farther than this above or below all bands is likely a slip of units, m.
+const STATION_REACH_M: f64 = 500.0;
+/// Basin over station precipitation outside this is likely a slip of the gradient or the elevations.
+const USUAL_PRECIPITATION_RATIO: std::ops::RangeInclusive<f64> = 0.4..=3.0;
+
 /// A basin as the engine needs it: bands from the lowest up, and the gradients that carry station weather to them.
 #[derive(Debug, Clone)]
 pub struct Basin {
@@ -43,5 +50,30 @@ impl Basin {
             .zip(self.shares())
             .map(|(band, share)| share * self.precipitation.factor(station_elevation_m, band.elevation_m))
             .sum()
+    }
+
+    /// What about the bands and the station is unlikely.
+    pub fn unlikely(&self, station_elevation_m: f64) -> Vec<Unlikely> {
+        let mut found = Vec::new();
+        if let (Some(lowest), Some(highest)) = (self.bands.first(), self.bands.last()) {
+            let reach = lowest.lower_m - STATION_REACH_M..=highest.upper_m + STATION_REACH_M;
+            if !reach.contains(&station_elevation_m) {
+                found.push(Unlikely::new(
+                    "weather.station_elevation_m",
+                    format!(
+                        "{station_elevation_m} m lies far outside the bands, {} to {} m: are both in metres?",
+                        lowest.lower_m, highest.upper_m
+                    ),
+                ));
+            }
+        }
+        let ratio = self.precipitation_ratio(station_elevation_m);
+        if !USUAL_PRECIPITATION_RATIO.contains(&ratio) {
+            found.push(Unlikely::new(
+                "basin.precipitation_gradient_pct_per_100m",
+                format!("gives the basin {ratio:.2} times the station's precipitation"),
+            ));
+        }
+        found
     }
 }

@@ -58,7 +58,10 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             let mut weather = record.series.clone();
             correct_catch(&mut weather, scenario.weather.gauge_multiplier, scenario.snow.rain_snow);
             let files = vec![file.clone(), bands_file, weather_file];
-            let (unlikely, defaults) = (draft.unlikely, draft.defaults);
+            let mut unlikely = draft.unlikely;
+            unlikely.extend(record.unlikely(basin.is_southern()));
+            unlikely.extend(basin.unlikely(scenario.weather.station_elevation_m));
+            let defaults = draft.defaults;
             Ok(Ready { scenario, basin, record, weather, unlikely, defaults, files, stem })
         }
         _ => Err(Failure::input(&faults, &file.name, &file.text, shared.is_coloured())),

@@ -5,11 +5,11 @@ use super::assemble::{Ready, assemble};
 use super::failure::Failure;
 use super::output;
 use crate::report::SCHEMA_VERSION;
-use crate::report::numbers::{amount, fixed};
+use crate::report::numbers::{amount, fixed, signed};
 use crate::scenario::DefaultInForce;
 use crate::season::SeasonSettings;
 use crate::snow::SnowParams;
-use crate::weather::{Counts, SkippedYear};
+use crate::weather::{Counts, Means, SkippedYear};
 use serde::Serialize;
 use std::fmt::Write;
 use std::path::Path;
@@ -24,6 +24,7 @@ struct Checked<'a> {
     record: &'a Counts,
     water_years_in_use: Vec<i32>,
     water_years_left_out: &'a [SkippedYear],
+    station_means_as_caught: Means,
     station_precipitation_mm_per_year: f64,
     basin_precipitation_mm_per_year: f64,
     basin_area_km2: f64,
@@ -59,6 +60,7 @@ fn document(ready: &Ready) -> Checked<'_> {
         record: &ready.record.counts,
         water_years_in_use: ready.record.series.years.iter().map(|year| year.water_year).collect(),
         water_years_left_out: &ready.record.skipped,
+        station_means_as_caught: ready.record.means(),
         station_precipitation_mm_per_year: station_mm,
         basin_precipitation_mm_per_year: station_mm * ready.precipitation_ratio(),
         basin_area_km2: ready.basin.area_km2(),
@@ -117,6 +119,17 @@ fn words(ready: &Ready) -> String {
             ),
         );
     }
+    let means = ready.record.means();
+    let degrees = |value: f64| signed(value, 1);
+    line(
+        "station temperature",
+        format!(
+            "{} degC over the year, {} in January, {} in July",
+            degrees(means.year_c),
+            degrees(means.month_c[0]),
+            degrees(means.month_c[6])
+        ),
+    );
     let (station_mm, ratio) = (ready.mean_precipitation_mm(), ready.precipitation_ratio());
     line("station precipitation", format!("{} a year, catch corrected", amount(station_mm)));
     line(

@@ -18,6 +18,11 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     let lanes = ready.lanes(&[MonthlyChange::NONE]);
     if !shared.quiet {
         output::complain(&crate::scenario::unlikely_lines(&ready.unlikely));
+        let left_out: Vec<String> =
+            ready.record.skipped.iter().map(|year| year.water_year.to_string()).collect();
+        if !left_out.is_empty() {
+            output::complain(&format!("left out, see check: water years {}\n", left_out.join(", ")));
+        }
     }
     if let Some(into) = &shared.into {
         let mut table = Vec::new();
@@ -33,7 +38,11 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         let mut manifest = manifest.to_string().into_bytes();
         manifest.push(b'\n');
         let files = [(files[0].to_owned(), table), (files[1].to_owned(), manifest)];
-        return publish(&files, into, shared.force).map_err(|error| Failure::FileSystem(error.to_string()));
+        publish(&files, into, shared.force).map_err(|error| Failure::FileSystem(error.to_string()))?;
+        if !shared.quiet {
+            output::complain(&format!("daily table: {}\n", into.join("daily.csv").display()));
+        }
+        return Ok(());
     }
     let mut out = BufWriter::with_capacity(1 << 16, io::stdout().lock());
     daily_csv(&lanes, &ready.weather, &mut out).map_err(failure)?;

@@ -1,8 +1,9 @@
 //! Puts every question to an ensemble, measure by measure, for the basin and for each band.
 
 use super::chance::Chances;
-use super::crossing::{Crossing, crossing};
+use super::crossing::{Crossing, CrossingRange, crossing, crossing_range};
 use super::distribution::Distribution;
+use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Ranked, Resamples};
 use super::shift::{Shift, percent_change};
 use super::spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
@@ -66,6 +67,8 @@ pub struct MeasureFindings {
     pub weather_spread: Option<Spread>,
     /// From which warming on the shift outweighs the precipitation spread.
     pub outweighs: Crossing,
+    /// Monte Carlo range of that warming.
+    pub outweighs_range: Option<CrossingRange>,
     /// One entry a level, in the order of the levels.
     pub levels: Vec<LevelFindings>,
 }
@@ -172,6 +175,7 @@ fn of_band(seasons: &Seasons, band: usize, at: usize) -> Asked<'_> {
 /// The reference as every level is held against it.
 struct Reference {
     periods: Vec<f64>,
+    median: f64,
     spread: Option<Spread>,
     /// The spread's quantiles in every resample.
     spreads: Vec<Option<[f64; 3]>>,
@@ -182,25 +186,31 @@ impl Asked<'_> {
     fn find(&self, questions: &Questions<'_>, resamples: &Resamples) -> MeasureFindings {
         let periods: Vec<f64> = self.periods.row(questions.reference).to_vec();
         let reference = Reference {
+            median: quantile(&sorted(periods.iter().copied()), 0.5),
             spread: Spread::of(&periods),
             spreads: Spread::resampled(&periods, resamples),
             years: self.ranked_years(questions.reference),
             periods,
         };
-        let levels: Vec<LevelFindings> = (0..questions.levels_c.len())
-            .map(|level| {
-                let found = self.find_level(level, questions.levels_c[level]);
-                if level == questions.reference {
-                    found
-                } else {
-                    self.compare(found, level, &reference, resamples)
-                }
-            })
-            .collect();
+        let mut levels = Vec::with_capacity(questions.levels_c.len());
+        let mut ratios_above = Vec::new();
+        for (level, level_c) in questions.levels_c.iter().enumerate() {
+            let found = self.find_level(level, *level_c);
+            if level == questions.reference {
+                levels.push(found);
+                continue;
+            }
+            let (found, ratios) = self.compare(found, level, &reference, resamples);
+            levels.push(found);
+            if level > questions.reference {
+                ratios_above.push((*level_c, ratios));
+            }
+        }
         let warmer: Vec<(f64, Option<f64>)> = levels[questions.reference + 1..]
             .iter()
             .map(|level| (level.level_c, level.signal_to_spread.map(|ratio| ratio.value)))
             .collect();
+        let reference_c = questions.levels_c[questions.reference];
         let single_years = reference.years.as_ref();
         MeasureFindings {
             measure: self.measure.clone(),
@@ -208,7 +218,8 @@ impl Asked<'_> {
             weather_spread: single_years.and_then(|years| {
                 Spread::of(&years.values().iter().map(|(value, _)| *value).collect::<Vec<_>>())
             }),
-            outweighs: crossing(questions.levels_c[questions.reference], &warmer),
+            outweighs: crossing(reference_c, &warmer),
+            outweighs_range: crossing_range(reference_c, &ratios_above),
             levels,
         }
     }
@@ -240,37 +251,38 @@ impl Asked<'_> {
         }
     }
 
-    /// What a level is against the reference.
+    /// What a level is against the reference, and its signal to spread in every resample.
     fn compare(
         &self,
         found: LevelFindings,
         level: usize,
         reference: &Reference,
         resamples: &Resamples,
-    ) -> LevelFindings {
+    ) -> (LevelFindings, Vec<Option<f64>>) {
         let warmed: Vec<f64> = self.periods.row(level).to_vec();
         let chances =
             reference.years.as_ref().zip(self.ranked_years(level)).map(|(reference_years, warmed_years)| {
                 Chances::of(&reference.periods, &warmed, reference_years, &warmed_years, resamples)
             });
         let Some((shift, shifts)) = Shift::of(&reference.periods, &warmed, resamples) else {
-            return LevelFindings { chances, ..found };
+            return (LevelFindings { chances, ..found }, Vec::new());
         };
         let median = shift.median.value;
-        let percent = |spread: Spread| percent_change(median, spread.q50);
-        LevelFindings {
+        let ratio = reference
+            .spread
+            .and_then(|spread| signal_to_spread(median, &spread, &shifts, &reference.spreads));
+        let found = LevelFindings {
             shift: Some(shift),
-            percent_change: reference
-                .spread
-                .filter(|_| self.measure.kind == Kind::AmountMm)
-                .and_then(percent),
-            signal_to_spread: reference
-                .spread
-                .and_then(|spread| signal_to_spread(median, &spread, &shifts, &reference.spreads)),
-            signal_to_noise: signal_to_noise(&reference.periods, &warmed),
+            percent_change: match self.measure.kind {
+                Kind::AmountMm => percent_change(median, reference.median),
+                Kind::DayOfWaterYear => None,
+            },
+            signal_to_spread: ratio.as_ref().map(|(ratio, _)| *ratio),
+            signal_to_noise: Some(signal_to_noise(&reference.periods, &warmed)),
             variance_shares: TwoWay::of(&[&reference.periods, &warmed]).and_then(|table| table.shares()),
             chances,
             ..found
-        }
+        };
+        (found, ratio.map_or(Vec::new(), |(_, ratios)| ratios))
     }
 }

@@ -65,7 +65,7 @@ fn reaches_median(reference: &[f64], warmed: &[f64], resamples: &Resamples) -> O
     }
     let share = |weights: &[u32], median: f64| {
         let reached = warmed.iter().zip(weights).filter(|(value, _)| **value >= median);
-        reached.map(|(_, weight)| f64::from(*weight)).sum::<f64>() / warmed.len() as f64
+        f64::from(reached.map(|(_, weight)| *weight).sum::<u32>()) / warmed.len() as f64
     };
     let ranked = Ranked::new(reference.iter().copied().zip(0..));
     let value = share(&vec![1; warmed.len()], median);

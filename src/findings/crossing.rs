@@ -1,5 +1,6 @@
 //! The crossing: from which warming on the shift outweighs the spread.
 
+use super::quantile::{quantile, sorted};
 use serde::Serialize;
 
 /// Where signal to spread first passes 1, scanning up from the reference.
@@ -43,4 +44,32 @@ pub fn crossing(reference_c: f64, ratios: &[(f64, Option<f64>)]) -> Crossing {
         Some((up_to_c, _)) => Crossing::NotReached { up_to_c: *up_to_c },
         None => Crossing::Unknown,
     }
+}
+
+/// How far the crossing would move with other realizations: its 5-95 % range over resamples.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct CrossingRange {
+    /// 5 % quantile, degC; none where it is not reached.
+    pub q05_c: Option<f64>,
+    /// 95 % quantile, degC; none where it is not reached.
+    pub q95_c: Option<f64>,
+}
+
+/// The range of the crossing. `ratios` holds, for each level above the reference in ascending order, the ratio of every
+/// resample. Nothing where a resample has no ratio at a level that it needs.
+pub(super) fn crossing_range(reference_c: f64, ratios: &[(f64, Vec<Option<f64>>)]) -> Option<CrossingRange> {
+    let resamples = ratios.first()?.1.len();
+    let mut found = Vec::with_capacity(resamples);
+    for resample in 0..resamples {
+        let one: Vec<(f64, Option<f64>)> =
+            ratios.iter().map(|(level_c, of)| (*level_c, of.get(resample).copied().flatten())).collect();
+        found.push(match crossing(reference_c, &one) {
+            Crossing::At { level_c } => level_c,
+            Crossing::NotReached { .. } => f64::INFINITY,
+            Crossing::Unknown => return None,
+        });
+    }
+    let found = sorted(found);
+    let reached = |p| Some(quantile(&found, p)).filter(|level_c| level_c.is_finite());
+    Some(CrossingRange { q05_c: reached(0.05), q95_c: reached(0.95) })
 }

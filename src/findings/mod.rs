@@ -15,7 +15,7 @@ mod variance;
 
 pub use answer::{BandFindings, Findings, LevelFindings, MeasureFindings, Questions, answer};
 pub use chance::{Chance, Chances};
-pub use crossing::{Crossing, crossing};
+pub use crossing::{Crossing, CrossingRange, crossing};
 pub use distribution::{DOTS, Distribution};
 pub use odds::unpaired_chance;
 pub use quantile::{quantile, sorted};

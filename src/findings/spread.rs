@@ -45,20 +45,25 @@ impl Spread {
 /// The size of the shift over the half of the reference's 5-95 % spread that it points to, with its Monte Carlo error.
 /// Above 1 the warmed median leaves the reference's 5-95 % range: warming outweighs.
 ///
-/// `shifts` and `spreads` are the same of every resample. Nothing where the reference does not spread.
+/// `shifts` and `spreads` are the same of every resample, and the ratio of every resample is returned beside. Nothing
+/// where the reference does not spread.
 pub fn signal_to_spread(
     shift: f64,
     spread: &Spread,
     shifts: &[Option<f64>],
     spreads: &[Option<[f64; 3]>],
-) -> Option<Estimate> {
+) -> Option<(Estimate, Vec<Option<f64>>)> {
     let ratio = |shift: f64, half: f64| (half > 0.0 && half.is_finite()).then(|| shift.abs() / half);
     let value = ratio(shift, spread.half_towards(shift))?;
-    let resampled = shifts.iter().zip(spreads).map(|(shift, quantiles)| {
-        let (shift, quantiles) = ((*shift)?, (*quantiles)?);
-        ratio(shift, half_towards(quantiles, shift))
-    });
-    Some(Estimate::new(value, resampled))
+    let resampled: Vec<Option<f64>> = shifts
+        .iter()
+        .zip(spreads)
+        .map(|(shift, quantiles)| {
+            let (shift, quantiles) = ((*shift)?, (*quantiles)?);
+            ratio(shift, half_towards(quantiles, shift))
+        })
+        .collect();
+    Some((Estimate::new(value, resampled.iter().copied()), resampled))
 }
 
 fn half_towards([q05, q50, q95]: [f64; 3], shift: f64) -> f64 {
@@ -69,14 +74,14 @@ fn half_towards([q05, q50, q95]: [f64; 3], shift: f64) -> f64 {
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct SignalToNoise {
     /// Over the reference's standard deviation between realizations.
-    pub against_reference: f64,
+    pub against_reference: Option<f64>,
     /// Over the standard deviation of the paired changes: why common realizations make small warming visible.
-    pub paired: f64,
+    pub paired: Option<f64>,
 }
 
 /// The mean paired change, without its sign, over one standard deviation; nothing where there is no deviation or fewer
 /// than two pairs.
-pub fn signal_to_noise(reference: &[f64], warmed: &[f64]) -> Option<SignalToNoise> {
+pub fn signal_to_noise(reference: &[f64], warmed: &[f64]) -> SignalToNoise {
     let pairs: Vec<(f64, f64)> = reference
         .iter()
         .copied()
@@ -86,9 +91,7 @@ pub fn signal_to_noise(reference: &[f64], warmed: &[f64]) -> Option<SignalToNois
     let changes: Vec<f64> = pairs.iter().map(|(before, after)| after - before).collect();
     let before: Vec<f64> = pairs.iter().map(|(before, _)| *before).collect();
     let mean = (changes.iter().sum::<f64>() / changes.len() as f64).abs();
-    let over = |deviation: f64| (deviation > 0.0).then_some(mean / deviation);
-    Some(SignalToNoise {
-        against_reference: over(standard_deviation(&before)?)?,
-        paired: over(standard_deviation(&changes)?)?,
-    })
+    let over =
+        |values: &[f64]| standard_deviation(values).filter(|deviation| *deviation > 0.0).map(|d| mean / d);
+    SignalToNoise { against_reference: over(&before), paired: over(&changes) }
 }

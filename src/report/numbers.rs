@@ -7,9 +7,10 @@ use chrono::Datelike;
 /// The word for a number that is not there.
 pub const DASH: &str = "–";
 
-/// A number with so many decimals, a true minus, no minus before zero, and thousands set apart by a thin space.
+/// A number with so many decimals (at most three), halves rounded away from zero, a true minus, no minus before zero, and thousands set apart by a thin space.
 pub fn fixed(value: f64, decimals: usize) -> String {
-    let text = format!("{:.decimals$}", value.abs());
+    let scale = [1.0, 10.0, 100.0, 1000.0].get(decimals).copied().unwrap_or(1.0);
+    let text = format!("{:.decimals$}", (value.abs() * scale).round() / scale);
     let is_zero = text.bytes().all(|byte| byte == b'0' || byte == b'.');
     let (whole, fraction) = text.split_at(text.find('.').unwrap_or(text.len()));
     let mut grouped = String::new();
@@ -89,6 +90,7 @@ mod tests {
         assert_eq!(fixed(-0.04, 1), "0.0", "no minus before zero");
         assert_eq!(fixed(-12_345.6, 0), "−12\u{2009}346");
         assert_eq!(signed(0.0, 0), "0");
+        assert_eq!(signed(-6.5, 0), "−7", "as days_moved rounds");
         assert_eq!(level(1.5), "+1.5 °C");
         assert_eq!(level(-2.0), "−2 °C");
         assert_eq!(days_moved(-0.6), "1 day earlier");

@@ -102,8 +102,8 @@ fn row(place: Place<'_>, measure: &Measure, level: &LevelFindings, kind: Kind) -
         row.push(optional(level.percent_change));
     }
     row.extend(estimate(level.signal_to_spread));
-    row.push(optional(level.signal_to_noise.map(|ratio| ratio.against_reference)));
-    row.push(optional(level.signal_to_noise.map(|ratio| ratio.paired)));
+    row.push(optional(level.signal_to_noise.and_then(|ratio| ratio.against_reference)));
+    row.push(optional(level.signal_to_noise.and_then(|ratio| ratio.paired)));
     row.extend(level.years_undefined.map(|count| count.to_string()));
     if let Some(single_years) = &level.single_years {
         row.extend(quantiles(single_years));

@@ -1,7 +1,7 @@
 //! The words of the briefing, explained.
 
 /// Terms and their meanings.
-pub const TERMS: [(&str, &str); 11] = [
+pub const TERMS: [(&str, &str); 15] = [
     ("Snow water equivalent (SWE)", "depth of water if the snow were melted, mm"),
     ("Water year", "starts on the stated day and is named for the calendar year in which it ends"),
     (
@@ -20,9 +20,25 @@ pub const TERMS: [(&str, &str); 11] = [
         "Precipitation spread",
         "5–95 % range of the period value over realizations at the reference, with the temperatures its years bring",
     ),
+    (
+        "1 April SWE, survey-date SWE",
+        "SWE as that day begins: in the daily table, the state at the end of the day before",
+    ),
     ("Half spread", "from the reference's median to the end of its spread that a shift points to"),
     ("Weather spread", "the same range over single years"),
     ("Melt-out", "basin: first day after the peak with at most 5 % of it left; band: first day below 1 mm"),
+    (
+        "Net melt",
+        "melt less refreezing; its dates are those by which 10, 50 and 90 % of the year's have come",
+    ),
+    (
+        "Half-gone day, last day with snow",
+        "first day after the peak with at most half of it left; last day with 1 mm or more",
+    ),
+    (
+        "Centroid of snowpack outflow",
+        "the day on which the year's outflow balances: sum of day times outflow over outflow",
+    ),
     ("Snowpack outflow, water input", "water leaving the pack; the same with rain on bare ground"),
     ("± behind a chance or ratio", "Monte Carlo error: one standard deviation over resampled realizations"),
 ];

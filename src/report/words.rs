@@ -1,7 +1,9 @@
 //! The answer in words. Every word hangs on a number of the findings and turns round when the number does.
 
 use super::numbers::{amount, amount_decimals, days_moved, fixed, level, signed};
-use crate::findings::{Chance, Crossing, Findings, LevelFindings, MeasureFindings};
+use crate::findings::{
+    Chance, Crossing, CrossingRange, Findings, LEAST_REFERENCE_MM, LevelFindings, MeasureFindings,
+};
 use crate::season::Kind;
 
 /// The answer to the study's question.
@@ -60,22 +62,32 @@ pub fn period_name(findings: &Findings, measure: &MeasureFindings) -> String {
 
 fn verdict(findings: &Findings, headline: &MeasureFindings) -> String {
     let name = period_name(findings, headline);
+    if let Some(spread) = headline.precipitation_spread
+        && headline.measure.kind == Kind::AmountMm
+        && spread.q50 < LEAST_REFERENCE_MM
+    {
+        return format!(
+            "There is hardly any snow to lose: the reference's {name} is {} in the median. Check units, elevations and the \
+             hemisphere if you know better.",
+            amount(spread.q50)
+        );
+    }
     match headline.outweighs {
         Crossing::At { level_c } => format!(
-            "From about {} °C of warming on, the warming outweighs the precipitation spread of the {name}.",
-            signed(level_c, 1)
+            "From about {} °C of warming on{}, the warming outweighs the precipitation spread of the {name}; up to there, \
+             precipitation outweighs the warming.",
+            signed(level_c, 1),
+            crossing_range(findings, headline.outweighs_range)
         ),
         Crossing::NotReached { up_to_c } => {
             let ratio = headline.levels.last().and_then(|level| level.signal_to_spread);
             let ratio = ratio.map_or(String::new(), |ratio| {
-                format!(
-                    ": at {} the shift is {} times the half spread",
-                    level(up_to_c),
-                    fixed(ratio.value, 2)
-                )
+                let ratio = fixed(ratio.value, 2);
+                format!(": at {} the shift is {ratio} times the half spread", level(up_to_c))
             });
             format!(
-                "Up to {}, warming does not outweigh the precipitation spread of the {name}{ratio}.",
+                "Up to {}, warming does not outweigh the precipitation spread of the {name}, precipitation outweighs the \
+                 warming{ratio}.",
                 level(up_to_c)
             )
         }
@@ -86,32 +98,44 @@ fn verdict(findings: &Findings, headline: &MeasureFindings) -> String {
     }
 }
 
+/// ` (Monte Carlo range +1.3 to +1.5)`, where the realizations at hand leave that open.
+fn crossing_range(findings: &Findings, range: Option<CrossingRange>) -> String {
+    let highest = findings.levels_c.last().copied().unwrap_or_default();
+    let words =
+        |end: Option<f64>| end.map_or(format!("above {}", signed(highest, 1)), |level_c| signed(level_c, 1));
+    match range {
+        Some(CrossingRange { q05_c, q95_c }) if words(q05_c) != words(q95_c) => {
+            format!(" (Monte Carlo range {} to {})", words(q05_c), words(q95_c))
+        }
+        _ => String::new(),
+    }
+}
+
 fn how_much(findings: &Findings, headline: &MeasureFindings, at: &LevelFindings) -> String {
-    let name = period_name(findings, headline);
     let Some(shift) = at.shift else {
         return String::new();
     };
-    let verb = match shift.median.value {
-        change if change < 0.0 => "falls",
-        change if change > 0.0 => "rises",
-        _ => "stays",
+    let change_mm = shift.median.value;
+    let change = if change_mm == 0.0 {
+        "does not change".to_owned()
+    } else {
+        format!("{} by {}", if change_mm < 0.0 { "falls" } else { "rises" }, amount(change_mm.abs()))
     };
     let percent = at.percent_change.map_or(String::new(), |percent| format!(" ({} %)", signed(percent, 0)));
     let ratio = at.signal_to_spread.map_or(String::new(), |ratio| {
         let error = ratio.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
         let word = if ratio.value > 1.0 { "outweighs" } else { "does not outweigh" };
-        format!("; {}{error} times the half spread, so it {word} it", fixed(ratio.value, 2))
+        format!("; that is {}{error} times the half spread, so it {word} it", fixed(ratio.value, 2))
     });
-    let by = match verb {
-        "stays" => String::new(),
-        _ => format!(" by {}", amount(shift.median.value.abs())),
-    };
+    let decimals = amount_decimals(shift.q05.abs().max(shift.q95.abs()));
     format!(
-        "At {}, the {name} {verb}{by}{percent} in the median of {} pairs, 90 % of them between {} and {} mm{ratio}.",
+        "At {}, the {} {change}{percent}: the median over {} realizations, each against itself, 90 % of them between {} \
+         and {} mm{ratio}.",
         level(at.level_c),
+        period_name(findings, headline),
         shift.pairs,
-        signed(shift.q05, amount_decimals(shift.q05)),
-        signed(shift.q95, amount_decimals(shift.q95)),
+        signed(shift.q05, decimals),
+        signed(shift.q95, decimals),
     )
 }
 
@@ -124,8 +148,8 @@ fn yardstick(
     if let Some(spread) = headline.precipitation_spread {
         words.push(format!(
             "Yardstick: the reference's {}, over {} realizations of {} years, with its own temperatures: median {}, 5–95 % \
-             from {} to {}. 'Outweighs' means that the warmed median leaves that range; the half spread is the part of \
-             it between the median and the end that the shift points to.",
+             from {} to {}. The half spread is the part of that range between the median and the end that a shift points to; \
+             'outweighs' means that the median shift is larger.",
             period_name(findings, headline),
             findings.realizations,
             findings.years,
@@ -148,7 +172,7 @@ fn yardstick(
         .levels
         .iter()
         .filter_map(|at| {
-            let (half_spread, one_sd) = (at.signal_to_spread?.value, at.signal_to_noise?.against_reference);
+            let (half_spread, one_sd) = (at.signal_to_spread?.value, at.signal_to_noise?.against_reference?);
             ((half_spread > 1.0) != (one_sd > 1.0)).then(|| {
                 format!(
                     "{} ({} half spreads, {} standard deviations)",

@@ -3,7 +3,15 @@
 /// The nearest of `known` by the fewest letters changed, added, dropped or exchanged with their neighbour; none where
 /// even the nearest is far.
 pub(super) fn nearest<'k>(typed: &str, known: impl IntoIterator<Item = &'k str>) -> Option<&'k str> {
-    let close_enough = (typed.chars().count() / 3).max(2);
+    let length = typed.chars().count();
+    let close_enough = (length / 3).max(2).min(length.saturating_sub(1));
+    let known: Vec<&str> = known.into_iter().collect();
+    let lower = typed.to_lowercase();
+    if length > 0
+        && let Some(word) = known.iter().find(|word| word.to_lowercase().ends_with(&lower))
+    {
+        return Some(word);
+    }
     known
         .into_iter()
         .map(|word| (distance(typed, word), word))
@@ -44,5 +52,7 @@ mod tests {
         assert_eq!(nearest("melt_bsae_c", known), Some("melt_base_c"));
         assert_eq!(nearest("degree", known), Some("degree_rule"));
         assert_eq!(nearest("albedo", known), None);
+        assert_eq!(nearest("F", ["degC", "degF", "K"]), Some("degF"));
+        assert_eq!(nearest("celsius", ["degC", "degF", "K"]), None);
     }
 }

@@ -76,7 +76,10 @@ impl<'d> Section<'d> {
             self.path_of(key),
             described(value),
             expected,
-            format!("write {} = {expected}", key.rsplit('.').next().unwrap_or(key)),
+            match key.split_once('[') {
+                Some((list, _)) => format!("write {list} as a list of such values, as in the demo scenarios"),
+                None => format!("write {key} = {}", example_of(expected)),
+            },
         ));
     }
 
@@ -103,8 +106,15 @@ impl<'d> Section<'d> {
     /// A table that must be there.
     pub fn required_section(&mut self, key: &'static str) -> Self {
         if !self.has(key) {
-            let (found, mend) = (format!("no [{key}]"), format!("add a line [{key}] and its keys below it"));
-            self.fault(Fault::key(self.path_of(key), found, format!("a table [{key}]"), mend));
+            let (found, mend) = if self.path.is_empty() {
+                (format!("no [{key}]"), format!("add a line [{key}] and its keys below it"))
+            } else {
+                (
+                    format!("no '{key}'"),
+                    format!("add {key} = {{ column = \"...\", unit = \"...\" }} in [{}]", self.path),
+                )
+            };
+            self.fault(Fault::key(self.path_of(key), found, format!("a table '{key}'"), mend));
         }
         self.section(key)
     }
@@ -331,5 +341,17 @@ fn described(value: &DeValue<'_>) -> String {
         DeValue::Datetime(date) => format!("the date {date}"),
         DeValue::Array(_) => "a list".to_owned(),
         DeValue::Table(_) => "a table".to_owned(),
+    }
+}
+
+/// How a value of the expected kind is typed.
+fn example_of(expected: &str) -> &str {
+    match expected {
+        "a number" => "2.5",
+        "a list of numbers" => "[0, 1, 2]",
+        "a text in quotes" => "\"...\"",
+        "a list of texts in quotes" => "[\"...\"]",
+        "a table" => "{ ... }",
+        other => other,
     }
 }

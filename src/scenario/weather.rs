@@ -165,7 +165,7 @@ fn read_precipitation(mut section: Section<'_>) -> Option<PrecipitationColumn> {
             section.required_text(
                 "reading",
                 "\"start-of-day\" or \"end-of-day\"",
-                "say when an accumulating gauge is read: it decides to which day its water belongs",
+                "add reading = \"start-of-day\" or \"end-of-day\": it decides to which day the water belongs",
             );
         }
         let reset_tolerance_mm = section.number_or(

@@ -1,7 +1,7 @@
 //! When the snow melts: dates of net melt, half-gone day, melt-out.
 
 use super::rows;
-use super::{BARE_MM, BASIN_MELT_OUT_SHARE, LEAST_MELT_MM, LEAST_PEAK_MM};
+use super::{BARE_MM, BASIN_MELT_OUT_SHARE, LEAST_MELT_MM, LEAST_PEAK_MM, SAME_SWE_MM};
 use super::{Measure, NONE, NOT_GONE, Peaks, Place, SeasonSettings};
 use crate::snow::YearBlock;
 
@@ -45,7 +45,7 @@ pub fn keeps_snow(block: &YearBlock, column: usize) -> bool {
     let swe = |day: usize| block.swe_mm[day * block.width + column];
     let mut peak_day = 0;
     for day in 1..block.days {
-        if swe(day) > swe(peak_day) {
+        if swe(day) > swe(peak_day) + SAME_SWE_MM {
             peak_day = day;
         }
     }
@@ -76,6 +76,7 @@ fn departure(block: &YearBlock, peaks: &Peaks, column: usize) -> [f64; 3] {
         if is_basin { swe <= BASIN_MELT_OUT_SHARE * peak } else { swe < BARE_MM }
     };
     let melt_out = half_gone.and_then(|from| (from..=block.days).find(|day| is_out(swe(*day))));
-    let last_snow = melt_out.and_then(|_| (1..=block.days).rev().find(|day| swe(*day) >= BARE_MM));
+    let was_bare = (peak_day..=block.days).any(|day| swe(day) < BARE_MM);
+    let last_snow = (1..=block.days).rev().find(|day| was_bare && swe(*day) >= BARE_MM);
     [half_gone, melt_out, last_snow].map(|day| day.map_or(NOT_GONE, |day| day as f64))
 }

@@ -30,6 +30,9 @@ const BARE_MM: f64 = 1.0;
 /// A basin with this share of its peak left has melted out.
 const BASIN_MELT_OUT_SHARE: f64 = 0.05;
 
+/// SWE that differs by less is the same but for rounding, mm.
+const SAME_SWE_MM: f64 = 1e-9;
+
 /// Dates and windows of a season.
 #[derive(Debug, Clone, PartialEq, Serialize)]
 pub struct SeasonSettings {

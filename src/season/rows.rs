@@ -5,16 +5,23 @@
 use multiversion::multiversion;
 
 /// Highest value of each column and the first day (from 1) that has it. `highest` and `day` come in as 0 and 1.
+///
+/// A pack whose held water refreezes keeps its SWE, but for the rounding of ice and liquid: a later day is the peak's only
+/// where it stands higher than the first by more than [`super::SAME_SWE_MM`].
 #[multiversion(targets("x86_64+avx512f+avx512vl+avx512dq+avx2+avx", "x86_64+avx2+avx"))]
 pub(super) fn highest(table: &[f64], highest: &mut [f64], day: &mut [f64]) {
     let width = highest.len();
+    let mut on_day = vec![0.0; width];
     for (number, row) in table.chunks_exact(width).enumerate() {
         let this_day = (number + 1) as f64;
-        let (highest, day) = (&mut highest[..width], &mut day[..width]);
+        let (row, highest, day, on_day) =
+            (&row[..width], &mut highest[..width], &mut day[..width], &mut on_day[..width]);
         for column in 0..width {
-            let is_higher = row[column] > highest[column];
-            highest[column] = if is_higher { row[column] } else { highest[column] };
-            day[column] = if is_higher { this_day } else { day[column] };
+            let swe = row[column];
+            let is_new = swe > on_day[column] + super::SAME_SWE_MM;
+            on_day[column] = if is_new { swe } else { on_day[column] };
+            day[column] = if is_new { this_day } else { day[column] };
+            highest[column] = if swe > highest[column] { swe } else { highest[column] };
         }
     }
 }

@@ -8,6 +8,10 @@ use chrono::NaiveDate;
 /// No record is longer; a mistyped century would otherwise ask for millions of empty days.
 const LONGEST_RECORD_DAYS: usize = 400 * 366;
 
+/// Forms of dates that are tried where the stated one does not fit, to suggest one that does.
+const DATE_FORMATS: [&str; 7] =
+    ["%Y-%m-%d", "%m/%d/%Y", "%d/%m/%Y", "%d.%m.%Y", "%Y/%m/%d", "%Y%m%d", "%Y-%m-%d %H:%M"];
+
 /// A temperature column and its unit.
 #[derive(Debug, Clone, PartialEq)]
 pub struct TemperatureColumn {
@@ -194,12 +198,15 @@ fn read_date(
 ) -> Option<NaiveDate> {
     let date = NaiveDate::parse_from_str(row.cell(at), format).ok();
     if date.is_none() {
-        tally.push(table.cell_fault(
-            row,
-            at,
-            &format!("a date written as {format}"),
-            "state the file's own form in date = { column, format }, such as \"%d/%m/%Y\"",
-        ));
+        let reads = |other: &&&str| NaiveDate::parse_from_str(row.cell(at), other).is_ok();
+        let fitting: Vec<String> =
+            DATE_FORMATS.iter().filter(reads).map(|other| format!("{other:?}")).collect();
+        let mend = if fitting.is_empty() {
+            "state the file's own form in date = { column, format }, in the signs of strftime".to_owned()
+        } else {
+            format!("if the file writes dates so, state format = {} in date", fitting.join(" or "))
+        };
+        tally.push(table.cell_fault(row, at, &format!("a date written as {format}"), &mend));
     }
     date
 }

@@ -7,12 +7,14 @@
 mod columns;
 mod gaps;
 mod gauge;
+mod plausible;
 mod record;
 mod series;
 mod years;
 
 pub use columns::{Columns, Gauge, PrecipitationColumn, Reading, TemperatureColumn, TemperatureColumns};
 pub use gauge::GaugeCount;
+pub use plausible::Means;
 pub use record::{Counts, Record, read};
 pub use series::{Series, YearSpan, YearView};
 pub use years::{Limits, SkippedYear, Why};

@@ -32,6 +32,11 @@ pub enum Why {
         /// How many.
         days: usize,
     },
+    /// The record begins or ends within the year.
+    BeyondRecord {
+        /// How many of its days the record does not reach.
+        days: usize,
+    },
     /// A run of days without temperatures that is too long to interpolate, or at the record's edge.
     TemperatureGap {
         /// First day of the gap.
@@ -53,9 +58,12 @@ pub enum Why {
 impl fmt::Display for Why {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
         match self {
-            Self::MissingDays { days } => write!(f, "{days} days miss temperature or precipitation"),
+            Self::MissingDays { days } => {
+                write!(f, "temperature or precipitation missing on {}", days_in_words(*days))
+            }
+            Self::BeyondRecord { days } => write!(f, "{} of it lie outside the record", days_in_words(*days)),
             Self::TemperatureGap { from, days } => {
-                write!(f, "no temperatures for {days} days from {from}")
+                write!(f, "no temperatures for {} from {from}", days_in_words(*days))
             }
             Self::SeasonMean { season, mean_c, median_c } => write!(
                 f,
@@ -63,6 +71,10 @@ impl fmt::Display for Why {
             ),
         }
     }
+}
+
+fn days_in_words(days: usize) -> String {
+    if days == 1 { "1 day".to_owned() } else { format!("{days} days") }
 }
 
 /// A water year that is not run.
@@ -130,11 +142,11 @@ impl Screening<'_> {
         let to = days_between(self.first, end_day).min(self.is_missing.len());
         let inside = self.is_missing[from..to].iter().filter(|missing| **missing).count();
         let mut why = Vec::new();
-        if outside + inside > self.limits.missing_days_allowed {
-            why.push(Why::MissingDays { days: outside + inside });
-        } else if outside > 0 {
-            let gap_from = if first_day < self.first { first_day } else { record_end };
-            why.push(Why::TemperatureGap { from: gap_from, days: outside });
+        if outside > 0 {
+            why.push(Why::BeyondRecord { days: outside });
+        }
+        if inside > self.limits.missing_days_allowed {
+            why.push(Why::MissingDays { days: inside });
         }
         why.extend(
             self.open_gaps

@@ -54,7 +54,7 @@ error: date: '24.12.2000'
 86 | 24.12.2000,-12.3,-2.3,6.0
    | ^^^^^^^^^^ expected a date written as %Y-%m-%d
    |
-   = help: state the file's own form in date = { column, format }, such as "%d/%m/%Y"
+   = help: if the file writes dates so, state format = "%d.%m.%Y" in date
 
 error: precip_mm: '-9.0'
    --> weather.csv:370:21

@@ -24,6 +24,8 @@ fn both_demos_speak_for_their_numbers() {
     let sentence = cold["answer"]["amounts"][0].as_str().unwrap();
     assert!(sentence.starts_with("At +1 °C") && sentence.contains("does not outweigh"), "{sentence}");
     assert!(page.contains(sentence));
+    let verdict = cold["answer"]["verdict"].as_str().unwrap();
+    assert!(verdict.ends_with("up to there, precipitation outweighs the warming."), "{verdict}");
 
     let (main, page) = study(&basin, "demo/scenarios/alder-fork.toml");
     let ratio = |level: usize| {
@@ -36,9 +38,8 @@ fn both_demos_speak_for_their_numbers() {
         "linear between levels"
     );
     let verdict = main["answer"]["verdict"].as_str().unwrap();
-    assert!(
-        verdict.starts_with(&format!("From about +{crossing:.1} °C of warming on, the warming outweighs"))
-    );
+    assert!(verdict.starts_with(&format!("From about +{crossing:.1} °C of warming on")), "{verdict}");
+    assert!(verdict.contains("the warming outweighs the precipitation spread"), "{verdict}");
     assert!(page.contains(verdict));
     let mean =
         main["record"]["headline_by_year"].as_array().unwrap().iter().map(|y| y["value"].as_f64().unwrap());

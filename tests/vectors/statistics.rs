@@ -16,8 +16,9 @@ pub fn quantiles(case: &Case) {
 pub fn two_way(case: &Case) {
     let table: Vec<Vec<f64>> = case.input("table");
     let rows: Vec<&[f64]> = table.iter().map(Vec::as_slice).collect();
-    let parts = TwoWay::of(&rows).expect("a table that varies");
-    let shares = parts.shares().expect("a table that varies");
+    let parts = TwoWay::of(&rows);
+    let parts = parts.unwrap();
+    let shares = parts.shares().unwrap();
     case.check("sums_of_squares", &[parts.level, parts.realization, parts.residual]);
     case.check("f_ratio", &[parts.f_ratio]);
     case.check("shares", &[shares.level, shares.realization, shares.residual]);
@@ -26,7 +27,7 @@ pub fn two_way(case: &Case) {
 /// Signal to noise between the first and the last row of a table.
 pub fn noise(case: &Case) {
     let table: Vec<Vec<f64>> = case.input("table");
-    let found = signal_to_noise(&table[0], &table[table.len() - 1]).expect("a table that varies");
-    case.check("against_reference", &[found.against_reference]);
-    case.check("paired", &[found.paired]);
+    let found = signal_to_noise(&table[0], &table[table.len() - 1]);
+    case.check("against_reference", &[found.against_reference.unwrap()]);
+    case.check("paired", &[found.paired.unwrap()]);
 }

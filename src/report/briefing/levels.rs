@@ -15,7 +15,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
         div.scroll {
             table {
                 caption { "Basin mean, median over " (findings.realizations) " realizations of " (findings.years)
-                    "-year values; below it the median paired change from the reference, and how often the change is its half spread." }
+                    "-year values; below it the median paired change from the reference, and how many times its half spread that is." }
                 thead { tr {
                     th scope="col" { "Measure" }
                     @for level_c in &findings.levels_c { th scope="col" { (level(*level_c)) } }
