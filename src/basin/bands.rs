@@ -4,6 +4,9 @@ use crate::fault::Fault;
 use crate::table::{Format, Table, Tally};
 use serde::Serialize;
 
+/// A table of more bands is a table of something else.
+const MOST_BANDS: usize = 1000;
+
 /// One elevation band.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct Band {
@@ -34,7 +37,15 @@ pub fn read_bands(file: &str, text: &str) -> Result<Vec<Band>, Vec<Fault>> {
 
     let mut tally = Tally::default();
     let mut bands = Vec::new();
-    for row in table.rows() {
+    for (number, row) in table.rows().enumerate() {
+        if number == MOST_BANDS {
+            tally.push(table.file_fault(
+                format!("more than {MOST_BANDS} bands"),
+                "bands some 50 to 300 m high",
+                "join bands: the result changes little once they are 100 m high",
+            ));
+            break;
+        }
         let Some(row) = tally.keep(row) else { continue };
         let mut number = |column: usize| {
             let value = row.cell(column).parse::<f64>().ok().filter(|value| value.is_finite());

@@ -6,6 +6,7 @@ use super::input::{InputFile, ScenarioFile, read_data, read_scenario};
 use crate::basin::{Basin, read_bands};
 use crate::fault::{Fault, Unlikely};
 use crate::perturb::MonthlyChange;
+use crate::report::{Input, Origin};
 use crate::scenario::{DefaultInForce, Document, Draft, Scenario};
 use crate::snow::{LaneSpec, Lanes, correct_catch};
 use crate::weather::{Record, Series};
@@ -102,6 +103,22 @@ fn take<T>(result: Result<T, Vec<Fault>>, faults: &mut Vec<Fault>) -> Option<T> 
 }
 
 impl Ready {
+    /// What was read and the command that repeats it, without the flags that change no result.
+    pub fn origin(&self, command: &str, path: &Path, shared: &Shared) -> Origin {
+        let seed = shared.seed.map_or(String::new(), |seed| format!(" --seed {seed}"));
+        let roles = ["scenario", "bands", "weather"];
+        let inputs = roles.into_iter().zip(&self.files).map(|(role, file)| Input {
+            role,
+            path: file.name.clone(),
+            sha256: file.sha256.clone(),
+        });
+        Origin {
+            command: format!("thawline {command} {}{seed}", quoted(&path.display().to_string())),
+            seed: self.scenario.seed,
+            inputs: inputs.collect(),
+        }
+    }
+
     /// Mean yearly precipitation at the station, corrected for catch, mm.
     pub fn mean_precipitation_mm(&self) -> f64 {
         self.weather.precipitation_mm.iter().sum::<f64>() / self.weather.years.len() as f64
@@ -132,5 +149,15 @@ impl Ready {
             })
             .collect();
         Lanes::new(&groups)
+    }
+}
+
+/// A word as a shell takes it.
+fn quoted(word: &str) -> String {
+    let is_plain = |c: char| c.is_ascii_alphanumeric() || "-_./+,:@%".contains(c);
+    if !word.is_empty() && word.chars().all(is_plain) {
+        word.to_owned()
+    } else {
+        format!("'{}'", word.replace('\'', "'\\''"))
     }
 }

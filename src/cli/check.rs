@@ -99,6 +99,7 @@ fn words(ready: &Ready) -> String {
             counts.temperature_missing_days, counts.interpolated_days
         ),
     );
+    line("impossible values", format!("{} cells, taken as missing", counts.impossible_cells));
     line("  minimum above maximum", format!("{} days, taken as missing", counts.crossed_temperature_days));
     line(
         "precipitation missing",

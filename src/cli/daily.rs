@@ -2,10 +2,11 @@
 
 use super::arguments::Shared;
 use super::assemble::assemble;
-use super::failure::Failure;
+use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
+use super::progress::{is_interrupted, mind_interrupts};
 use crate::perturb::MonthlyChange;
-use crate::report::{DailyError, daily_csv, publish};
+use crate::report::{DailyError, daily_csv, daily_manifest_json, publish};
 use std::io::{self, BufWriter, Write};
 use std::path::Path;
 
@@ -27,18 +28,16 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     if let Some(into) = &shared.into {
         let mut table = Vec::new();
         daily_csv(&lanes, &ready.weather, &mut table).map_err(failure)?;
-        let files = ["daily.csv", "run.json"];
-        let manifest = serde_json::json!({
-            "schema_version": crate::report::SCHEMA_VERSION,
-            "program": "thawline",
-            "version": env!("CARGO_PKG_VERSION"),
-            "command": format!("thawline daily {}", path.display()),
-            "files": files,
-        });
-        let mut manifest = manifest.to_string().into_bytes();
-        manifest.push(b'\n');
-        let files = [(files[0].to_owned(), table), (files[1].to_owned(), manifest)];
-        publish(&files, into, shared.force).map_err(|error| Failure::FileSystem(error.to_string()))?;
+        let names = ["daily.csv", "run.json"];
+        let manifest = daily_manifest_json(&ready.origin("daily", path, shared), &names);
+        let manifest = manifest.map_err(|error| Failure::Ours(error.to_string()))?;
+        let files = [(names[0].to_owned(), table), (names[1].to_owned(), manifest)];
+        mind_interrupts();
+        may_be_replaced(into, "daily", shared)?;
+        if is_interrupted() {
+            return Err(Failure::Interrupted);
+        }
+        publish(&files, into).map_err(|error| unpublished(&error))?;
         if !shared.quiet {
             output::complain(&format!("daily table: {}\n", into.join("daily.csv").display()));
         }

@@ -1,7 +1,10 @@
 //! How a command fails: what is said, and with which exit status.
 
+use super::arguments::Shared;
 use crate::fault::Fault;
+use crate::report::{PublishError, may_replace};
 use crate::scenario::{Document, Drawing, Located, draw, located};
+use std::path::Path;
 use thiserror::Error;
 
 /// Exit statuses.
@@ -70,4 +73,14 @@ impl Failure {
             faults: faults.iter().map(|fault| located(fault, &drawing)).collect(),
         }
     }
+}
+
+/// Refuses a target folder that holds anything but earlier results of the same command, unless `--force` is given.
+pub(super) fn may_be_replaced(target: &Path, command: &str, shared: &Shared) -> Result<(), Failure> {
+    if shared.force { Ok(()) } else { may_replace(target, command).map_err(|error| unpublished(&error)) }
+}
+
+/// A failure to publish.
+pub(super) fn unpublished(error: &PublishError) -> Failure {
+    Failure::FileSystem(error.to_string())
 }

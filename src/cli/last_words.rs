@@ -22,26 +22,7 @@ pub(super) fn say(failure: &Failure, shared: &Shared) -> u8 {
         return failure.exit_status();
     }
     if shared.json {
-        let faults = match failure {
-            Failure::Input { faults, .. } => faults.as_slice(),
-            _ => &[],
-        };
-        let message = match failure {
-            Failure::Input { faults, .. } => format!("{} faults in the scenario or its data", faults.len()),
-            other => other.to_string(),
-        };
-        let document = FailureDocument {
-            schema_version: crate::report::SCHEMA_VERSION,
-            program: "thawline",
-            status: "failed",
-            exit_status: failure.exit_status(),
-            message,
-            faults,
-        };
-        return match output::print_json(&document) {
-            Ok(()) => failure.exit_status(),
-            Err(unsaid) => unsaid.exit_status(),
-        };
+        return document(failure);
     }
     let text = match failure {
         Failure::Input { drawn, .. } => drawn.clone(),
@@ -49,4 +30,27 @@ pub(super) fn say(failure: &Failure, shared: &Shared) -> u8 {
     };
     output::complain(&text);
     failure.exit_status()
+}
+
+/// The failure as one JSON document on standard output; gives the exit status.
+pub(super) fn document(failure: &Failure) -> u8 {
+    let (message, faults) = match failure {
+        Failure::Input { faults, .. } => {
+            let plural = if faults.len() == 1 { "" } else { "s" };
+            (format!("{} fault{plural} in the scenario or its data", faults.len()), faults.as_slice())
+        }
+        other => (other.to_string(), [].as_slice()),
+    };
+    let document = FailureDocument {
+        schema_version: crate::report::SCHEMA_VERSION,
+        program: "thawline",
+        status: "failed",
+        exit_status: failure.exit_status(),
+        message,
+        faults,
+    };
+    match output::print_json(&document) {
+        Ok(()) => failure.exit_status(),
+        Err(unsaid) => unsaid.exit_status(),
+    }
 }

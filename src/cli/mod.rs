@@ -23,15 +23,7 @@ use clap::error::ErrorKind;
 pub fn run() -> u8 {
     let arguments = match Arguments::try_parse() {
         Ok(arguments) => arguments,
-        Err(error) => {
-            let printed = error.print();
-            let is_help = matches!(error.kind(), ErrorKind::DisplayHelp | ErrorKind::DisplayVersion);
-            return match (is_help, printed) {
-                (true, Ok(())) => status::DONE,
-                (true, Err(_)) => status::FILE_SYSTEM,
-                (false, _) => status::COMMAND_LINE,
-            };
-        }
+        Err(error) => return without_arguments(&error),
     };
     let shared = arguments.shared;
     let result = match arguments.command {
@@ -43,5 +35,19 @@ pub fn run() -> u8 {
     match result {
         Ok(()) => status::DONE,
         Err(failure) => last_words::say(&failure, &shared),
+    }
+}
+
+/// Help and version on standard output; what is wrong with the command line on standard error, or as a document.
+fn without_arguments(error: &clap::Error) -> u8 {
+    let is_help = matches!(error.kind(), ErrorKind::DisplayHelp | ErrorKind::DisplayVersion);
+    if !is_help && std::env::args_os().any(|argument| argument == "--json") {
+        let text = error.render().to_string();
+        return last_words::document(&Failure::CommandLine(text.trim_end().to_owned()));
+    }
+    match (is_help, error.print()) {
+        (true, Ok(())) => status::DONE,
+        (true, Err(_)) => status::FILE_SYSTEM,
+        (false, _) => status::COMMAND_LINE,
     }
 }

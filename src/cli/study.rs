@@ -2,7 +2,7 @@
 
 use super::arguments::Shared;
 use super::assemble::{Ready, assemble};
-use super::failure::Failure;
+use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
 use crate::ensemble::{Halt, Plan, record_years, run as run_ensemble};
@@ -11,8 +11,8 @@ use crate::figures::{FIGURES, Setting};
 use crate::findings::{Findings, Questions, answer};
 use crate::perturb::YearBlocks;
 use crate::report::{
-    Answer, Input, Origin, PublishError, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words,
-    briefing_html, manifest_json, may_replace, publish, summary_json, tables,
+    Answer, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html, manifest_json,
+    publish, summary_json, tables,
 };
 use crate::season::Measures;
 use crate::snow::Path as RowPath;
@@ -35,13 +35,11 @@ struct Done<'a> {
 
 /// Runs the command.
 pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
-    mind_interrupts();
     let progress = Progress::new(shared);
     let ready = assemble(path, shared)?;
+    mind_interrupts();
     let target = target(&ready, shared)?;
-    if !shared.force {
-        may_replace(&target).map_err(|error| unpublished(&error))?;
-    }
+    may_be_replaced(&target, "study", shared)?;
     let scenario = &ready.scenario;
     let measures = Measures::new(scenario.season.clone());
     check_size(&ready, measures.list().len(), shared)?;
@@ -65,7 +63,8 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     if is_interrupted() {
         return Err(Failure::Interrupted);
     }
-    publish(&files, &target, shared.force).map_err(|error| unpublished(&error))?;
+    may_be_replaced(&target, "study", shared)?;
+    publish(&files, &target).map_err(|error| unpublished(&error))?;
     let into = target.display().to_string();
     if shared.json {
         let files = files.iter().map(|(name, _)| name.as_str()).collect();
@@ -119,17 +118,22 @@ fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findi
         realizations: scenario.realizations.count,
         path: RowPath::default(),
     };
-    let seasons = run_ensemble(&plan, progress).map_err(|halt| match halt {
-        Halt::Stopped => Failure::Interrupted,
-        Halt::Ledger(open) => Failure::Ours(open.to_string()),
-    })?;
+    let seasons = run_ensemble(&plan, progress).map_err(halted)?;
+    progress.stage("answering questions about them");
     let questions = Questions {
         levels_c: &warming.levels_c,
         reference: warming.reference,
         bands: &ready.basin.bands,
         seed: scenario.seed,
     };
-    Ok(answer(&seasons, &questions))
+    answer(&seasons, &questions, progress).map_err(halted)
+}
+
+fn halted(halt: Halt) -> Failure {
+    match halt {
+        Halt::Stopped => Failure::Interrupted,
+        Halt::Ledger(open) => Failure::Ours(open.to_string()),
+    }
 }
 
 fn describe<'a>(
@@ -144,13 +148,6 @@ fn describe<'a>(
     let lanes = ready.lanes(&[reference]);
     let years =
         record_years(&lanes, measures, &ready.weather).map_err(|open| Failure::Ours(open.to_string()))?;
-    let seed = shared.seed.map_or(String::new(), |seed| format!(" --seed {seed}"));
-    let roles = ["scenario", "bands", "weather"];
-    let inputs = roles.into_iter().zip(&ready.files).map(|(role, file)| Input {
-        role,
-        path: file.name.clone(),
-        sha256: file.sha256.clone(),
-    });
     Ok(Study {
         title: &scenario.title,
         basin: &ready.basin,
@@ -171,11 +168,7 @@ fn describe<'a>(
         findings,
         defaults: ready.defaults.iter().map(|default| (default.key.clone(), default.value.clone())).collect(),
         unlikely: &ready.unlikely,
-        origin: Origin {
-            command: format!("thawline study {}{seed}", path.display()),
-            seed: scenario.seed,
-            inputs: inputs.collect(),
-        },
+        origin: ready.origin("study", path, shared),
     })
 }
 
@@ -209,23 +202,21 @@ fn target(ready: &Ready, shared: &Shared) -> Result<PathBuf, Failure> {
     }
 }
 
+/// Refuses a study whose results would not fit: single years of the basin, period values of the bands.
 fn check_size(ready: &Ready, measures: usize, shared: &Shared) -> Result<(), Failure> {
     let realizations = &ready.scenario.realizations;
-    let years = f64::from(realizations.count) * realizations.years as f64;
-    let bytes = years * 8.0 * (measures * ready.scenario.warming.levels_c.len()) as f64;
+    let kept_of_each = realizations.years + ready.basin.bands.len();
+    let levels = ready.scenario.warming.levels_c.len();
+    let bytes = f64::from(realizations.count) * (kept_of_each * levels * measures) as f64 * 8.0;
     if bytes <= MOST_KEPT_BYTES {
         return Ok(());
     }
     let fault = Fault::key(
         "realizations.count",
         realizations.count,
-        format!("a study whose single years take at most {} GB", MOST_KEPT_BYTES / 1e9),
-        format!("these would take {:.0} GB: run fewer realizations, years or levels", bytes / 1e9),
+        format!("a study whose single years and bands take at most {} GB", MOST_KEPT_BYTES / 1e9),
+        format!("these would take {:.0} GB: run fewer realizations, years, levels or bands", bytes / 1e9),
     );
     let file = &ready.files[0];
     Err(Failure::input(&[fault], &file.name, &file.text, shared.is_coloured()))
-}
-
-fn unpublished(error: &PublishError) -> Failure {
-    Failure::FileSystem(error.to_string())
 }

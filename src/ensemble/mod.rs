@@ -9,6 +9,6 @@ mod watch;
 
 pub use plan::Plan;
 pub use record::{RecordYear, record_years};
-pub use run::{Halt, run};
+pub use run::run;
 pub use seasons::Seasons;
-pub use watch::{Silent, Watch};
+pub use watch::{Halt, Silent, Watch};

@@ -1,8 +1,9 @@
 //! One realization under every level: single years of the basin, period values of the bands.
 
 use super::plan::Plan;
+use super::watch::{Halt, Watch};
 use crate::season::{NONE, NOT_GONE, keeps_snow, period_value};
-use crate::snow::{Engine, OpenLedger};
+use crate::snow::Engine;
 use crate::weather::Series;
 
 /// What is kept of a realization.
@@ -38,12 +39,15 @@ impl<'p> Workshop<'p> {
 
     /// Runs a realization from bare ground. Where its first year leaves perennial snow in a band of the reference, that
     /// year is run once more on the snow it left.
-    pub fn run(&mut self, number: u32) -> Result<Kept, OpenLedger> {
+    pub fn run(&mut self, number: u32, watch: &dyn Watch) -> Result<Kept, Halt> {
         self.plan.generator.fill(number, &mut self.weather);
         self.engine.restart();
         let bands = self.plan.bands;
         let (lanes, reference) = (self.plan.lanes, self.plan.reference);
         for (year, span) in self.weather.years.iter().enumerate() {
+            if watch.wants_stop() {
+                return Err(Halt::Stopped);
+            }
             let view = self.weather.view(span);
             let mut block = self.engine.year(view)?;
             if year == 0 && (0..bands).any(|band| keeps_snow(block, lanes.column(reference, band))) {

@@ -3,21 +3,8 @@
 use super::plan::Plan;
 use super::realization::Workshop;
 use super::seasons::Seasons;
-use super::watch::Watch;
-use crate::snow::OpenLedger;
+use super::watch::{Halt, Watch};
 use rayon::prelude::*;
-use thiserror::Error;
-
-/// Why a run has no result.
-#[derive(Debug, Clone, Copy, PartialEq, Error)]
-pub enum Halt {
-    /// It was asked to stop.
-    #[error("stopped")]
-    Stopped,
-    /// Water was lost or made: a fault of the engine.
-    #[error(transparent)]
-    Ledger(#[from] OpenLedger),
-}
 
 /// Runs every realization under every level, on the threads of the current rayon pool.
 ///
@@ -34,10 +21,7 @@ pub fn run(plan: &Plan<'_>, watch: &dyn Watch) -> Result<Seasons, Halt> {
         .map_init(
             || Workshop::new(plan),
             |workshop, number| {
-                if watch.wants_stop() {
-                    return Err(Halt::Stopped);
-                }
-                let kept = workshop.run(number)?;
+                let kept = workshop.run(number, watch)?;
                 watch.realization_done();
                 Ok(kept)
             },

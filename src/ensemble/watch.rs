@@ -1,6 +1,9 @@
-//! What a run tells whoever watches it, and how it is asked to stop.
+//! What a run tells whoever watches it, how it is asked to stop, and why it has no result.
 
-/// Told of a run's progress; asked once a realization whether to stop. Every event is optional.
+use crate::snow::OpenLedger;
+use thiserror::Error;
+
+/// Told of a run's progress; asked once a water year of a realization whether to stop. Every event is optional.
 pub trait Watch: Sync {
     /// A run of so many realizations begins.
     fn begins(&self, _realizations: u32) {}
@@ -17,3 +20,14 @@ pub trait Watch: Sync {
 pub struct Silent;
 
 impl Watch for Silent {}
+
+/// Why a run has no result.
+#[derive(Debug, Clone, Copy, PartialEq, Error)]
+pub enum Halt {
+    /// It was asked to stop.
+    #[error("stopped")]
+    Stopped,
+    /// Water was lost or made: a fault of the engine.
+    #[error(transparent)]
+    Ledger(#[from] OpenLedger),
+}

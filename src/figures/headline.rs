@@ -11,7 +11,7 @@ use crate::findings::{Crossing, Findings, MeasureFindings};
 fn spoken_of(findings: &Findings, measure: &MeasureFindings) -> Option<usize> {
     let warmer = findings.reference + 1..measure.levels.len();
     let past_crossing = |level: &usize| match measure.outweighs {
-        Crossing::At { level_c } => findings.levels_c.get(*level).is_some_and(|at| *at >= level_c),
+        Crossing::At { level_c, .. } => findings.levels_c.get(*level).is_some_and(|at| *at >= level_c),
         Crossing::NotReached { .. } | Crossing::Unknown => false,
     };
     let others = warmer.clone().find(past_crossing).or(warmer.last());
@@ -102,8 +102,10 @@ fn both_in_words(half: f64, out: f64) -> String {
 
 fn against_spread(findings: &Findings, measure: &MeasureFindings, subject: &str) -> String {
     match measure.outweighs {
-        Crossing::At { level_c } => {
-            format!("from {} on, {subject} outweighs the precipitation spread", between_levels(level_c))
+        Crossing::At { level_c, until_c } => {
+            let until =
+                until_c.map_or_else(|| "on".to_owned(), |until_c| format!("to {}", between_levels(until_c)));
+            format!("from {} {until}, {subject} outweighs the precipitation spread", between_levels(level_c))
         }
         Crossing::NotReached { up_to_c } => {
             format!("up to {}, {subject} does not outweigh the precipitation spread", level(up_to_c))

@@ -9,7 +9,7 @@ use super::shift::{Shift, percent_change};
 use super::spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
 use super::variance::{TwoWay, VarianceShares};
 use crate::basin::Band;
-use crate::ensemble::Seasons;
+use crate::ensemble::{Halt, Seasons, Watch};
 use crate::season::{Kind, Measure, Place};
 use ndarray::{ArrayView2, Axis};
 use rayon::prelude::*;
@@ -93,8 +93,9 @@ pub struct LevelFindings {
     pub signal_to_spread: Option<Estimate>,
     /// Against one standard deviation.
     pub signal_to_noise: Option<SignalToNoise>,
-    /// Shares of variance over reference and level.
-    pub variance_shares: Option<VarianceShares>,
+    /// Shares of the period values' sums of squares over reference and level, two-way without replication; not the
+    /// partition of single years.
+    pub period_variance_shares: Option<VarianceShares>,
     /// Unpaired chances; for the basin alone.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub chances: Option<Chances>,
@@ -108,8 +109,11 @@ struct Asked<'a> {
     undefined: Vec<[usize; 2]>,
 }
 
-/// Answers every question about every measure.
-pub fn answer(seasons: &Seasons, questions: &Questions<'_>) -> Findings {
+/// Answers every question about every measure; `watch` is asked before each whether to stop.
+///
+/// # Errors
+/// `watch` wanting to stop.
+pub fn answer(seasons: &Seasons, questions: &Questions<'_>, watch: &dyn Watch) -> Result<Findings, Halt> {
     let (_, _, realizations, years) = seasons.basin_years.dim();
     let resamples = Resamples::new(questions.seed, realizations);
     let in_basin: Vec<Asked<'_>> =
@@ -125,11 +129,13 @@ pub fn answer(seasons: &Seasons, questions: &Questions<'_>) -> Findings {
                 .map(move |(at, _)| of_band(seasons, band, at))
         })
         .collect();
-    let find = |asked: &Asked<'_>| asked.find(questions, &resamples);
-    let basin: Vec<MeasureFindings> = in_basin.par_iter().map(find).collect();
-    let mut of_bands = in_bands.par_iter().map(find).collect::<Vec<_>>().into_iter();
+    let find = |asked: &Asked<'_>| {
+        if watch.wants_stop() { Err(Halt::Stopped) } else { Ok(asked.find(questions, &resamples)) }
+    };
+    let basin = in_basin.par_iter().map(find).collect::<Result<Vec<MeasureFindings>, Halt>>()?;
+    let mut of_bands = in_bands.par_iter().map(find).collect::<Result<Vec<_>, Halt>>()?.into_iter();
     let measures_of_a_band = in_bands.len() / questions.bands.len();
-    Findings {
+    Ok(Findings {
         levels_c: questions.levels_c.to_vec(),
         reference: questions.reference,
         realizations,
@@ -143,7 +149,7 @@ pub fn answer(seasons: &Seasons, questions: &Questions<'_>) -> Findings {
                 measures: of_bands.by_ref().take(measures_of_a_band).collect(),
             })
             .collect(),
-    }
+    })
 }
 
 fn of_basin(seasons: &Seasons, at: usize) -> Asked<'_> {
@@ -246,7 +252,7 @@ impl Asked<'_> {
             percent_change: None,
             signal_to_spread: None,
             signal_to_noise: None,
-            variance_shares: None,
+            period_variance_shares: None,
             chances: None,
         }
     }
@@ -279,7 +285,8 @@ impl Asked<'_> {
             },
             signal_to_spread: ratio.as_ref().map(|(ratio, _)| *ratio),
             signal_to_noise: Some(signal_to_noise(&reference.periods, &warmed)),
-            variance_shares: TwoWay::of(&[&reference.periods, &warmed]).and_then(|table| table.shares()),
+            period_variance_shares: TwoWay::of(&[&reference.periods, &warmed])
+                .and_then(|table| table.shares()),
             chances,
             ..found
         };

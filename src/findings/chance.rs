@@ -27,6 +27,14 @@ impl Chance {
     }
 }
 
+impl Chance {
+    /// The chance of the opposite.
+    pub fn opposite(self) -> Self {
+        let value = 1.0 - self.estimate.value;
+        Self { estimate: Estimate { value, ..self.estimate }, ..self }
+    }
+}
+
 /// The chances of a level.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct Chances {

@@ -11,6 +11,9 @@ pub enum Crossing {
     At {
         /// The warming.
         level_c: f64,
+        /// Where it falls back to 1 or below at a higher level, if it does, degC; linear between levels. More than one
+        /// return is not told apart.
+        until_c: Option<f64>,
     },
     /// Not up to the highest level.
     NotReached {
@@ -25,24 +28,32 @@ pub enum Crossing {
 ///
 /// ```
 /// use thawline::findings::{crossing, Crossing};
-/// assert_eq!(crossing(0.0, &[(1.0, Some(0.5)), (2.0, Some(1.5))]), Crossing::At { level_c: 1.5 });
+/// assert_eq!(crossing(0.0, &[(1.0, Some(0.5)), (2.0, Some(1.5))]), Crossing::At { level_c: 1.5, until_c: None });
+/// let and_back = crossing(0.0, &[(1.0, Some(2.0)), (2.0, Some(0.0))]);
+/// assert_eq!(and_back, Crossing::At { level_c: 0.5, until_c: Some(1.5) });
 /// assert_eq!(crossing(0.0, &[(1.0, Some(0.5))]), Crossing::NotReached { up_to_c: 1.0 });
 /// ```
 pub fn crossing(reference_c: f64, ratios: &[(f64, Option<f64>)]) -> Crossing {
     let mut below = (reference_c, 0.0);
+    let mut at = None;
     for (level_c, ratio) in ratios.iter().copied() {
         let Some(ratio) = ratio else {
             return Crossing::Unknown;
         };
-        if ratio > 1.0 {
+        if (ratio > 1.0) == at.is_none() {
             let share = (1.0 - below.1) / (ratio - below.1);
-            return Crossing::At { level_c: below.0 + share * (level_c - below.0) };
+            let crossed_c = below.0 + share * (level_c - below.0);
+            match at {
+                None => at = Some(crossed_c),
+                Some(level_c) => return Crossing::At { level_c, until_c: Some(crossed_c) },
+            }
         }
         below = (level_c, ratio);
     }
-    match ratios.last() {
-        Some((up_to_c, _)) => Crossing::NotReached { up_to_c: *up_to_c },
-        None => Crossing::Unknown,
+    match (at, ratios.last()) {
+        (Some(level_c), _) => Crossing::At { level_c, until_c: None },
+        (None, Some((up_to_c, _))) => Crossing::NotReached { up_to_c: *up_to_c },
+        (None, None) => Crossing::Unknown,
     }
 }
 
@@ -64,7 +75,7 @@ pub(super) fn crossing_range(reference_c: f64, ratios: &[(f64, Vec<Option<f64>>)
         let one: Vec<(f64, Option<f64>)> =
             ratios.iter().map(|(level_c, of)| (*level_c, of.get(resample).copied().flatten())).collect();
         found.push(match crossing(reference_c, &one) {
-            Crossing::At { level_c } => level_c,
+            Crossing::At { level_c, .. } => level_c,
             Crossing::NotReached { .. } => f64::INFINITY,
             Crossing::Unknown => return None,
         });

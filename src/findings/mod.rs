@@ -17,7 +17,6 @@ pub use answer::{BandFindings, Findings, LevelFindings, MeasureFindings, Questio
 pub use chance::{Chance, Chances};
 pub use crossing::{Crossing, CrossingRange, crossing};
 pub use distribution::{DOTS, Distribution};
-pub use odds::unpaired_chance;
 pub use quantile::{quantile, sorted};
 pub use resample::{Estimate, Resamples};
 pub use shift::{LEAST_REFERENCE_MM, Shift, percent_change};

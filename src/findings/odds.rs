@@ -101,19 +101,6 @@ fn score(reference: &[f64], warmed: &[f64]) -> f64 {
     score
 }
 
-/// The chance that a warmed value lies below a reference value of another realization, ties half. Both hold one value a
-/// realization, in the same order.
-///
-/// ```
-/// use thawline::findings::unpaired_chance;
-/// // Only pairs of different realizations count: 0 < 3 does, 2 > 1 does not.
-/// assert_eq!(unpaired_chance(&[1.0, 3.0], &[0.0, 2.0]), Some(0.5));
-/// ```
-pub fn unpaired_chance(reference: &[f64], warmed: &[f64]) -> Option<f64> {
-    let ranked = |values: &[f64]| Ranked::new(values.iter().copied().zip(0..));
-    Odds::new(&ranked(reference), &ranked(warmed), reference.len()).chance().map(|chance| chance.value)
-}
-
 #[cfg(test)]
 mod tests {
     use super::super::resample::standard_deviation;

@@ -16,7 +16,7 @@ pub use cautions::CAUTIONS;
 pub use daily::{DailyError, daily_csv};
 pub use publish::{PublishError, may_replace, publish};
 pub use study::{Input, Origin, Record, Study};
-pub use summary::{manifest_json, summary_json};
+pub use summary::{daily_manifest_json, manifest_json, summary_json};
 pub use tables::{ReportFile, tables};
 pub use words::{Answer, answer_in_words, period_name};
 

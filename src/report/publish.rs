@@ -21,6 +21,32 @@ pub enum PublishError {
         /// A file in it that no manifest of ours names.
         stranger: String,
     },
+    /// The target is a file or a link.
+    #[error("{target} is {what}, not a folder; nothing was replaced. Choose another folder with --into")]
+    NoFolder {
+        /// The target.
+        target: String,
+        /// What it is.
+        what: &'static str,
+    },
+    /// The target is where the command runs.
+    #[error(
+        "{target} is the current folder, which cannot be replaced. Choose a folder of its own with --into"
+    )]
+    CurrentFolder {
+        /// The target.
+        target: String,
+    },
+    /// Published, but what was there before is still on the disk.
+    #[error(
+        "the results are published whole, but what they replaced could not be removed from {path}: {error}"
+    )]
+    LeftOver {
+        /// Where it lies.
+        path: String,
+        /// What was said.
+        error: io::Error,
+    },
     /// The file system said no.
     #[error("cannot write {path}: {error}. Earlier results stand as they were")]
     Io {
@@ -31,22 +57,23 @@ pub enum PublishError {
     },
 }
 
-/// Whether a target may be replaced: it is not there, is empty, or holds only files that its own `run.json` names.
+/// Whether a target may be replaced: it is not there, is empty, or holds only files that its own `run.json` of the same
+/// command names.
 ///
 /// # Errors
 /// A file that is not ours, or a target that cannot be looked into.
-pub fn may_replace(target: &Path) -> Result<(), PublishError> {
+pub fn may_replace(target: &Path, command: &str) -> Result<(), PublishError> {
     let at = |error| io_error(target, error);
     match fs::symlink_metadata(target) {
         Err(error) if error.kind() == io::ErrorKind::NotFound => return Ok(()),
         Err(error) => return Err(at(error)),
         Ok(found) if !found.is_dir() => {
-            let stranger = target.file_name().unwrap_or_default().to_string_lossy().into_owned();
-            return Err(PublishError::NotOurs { target: target.display().to_string(), stranger });
+            let what = if found.is_symlink() { "a link" } else { "a file" };
+            return Err(PublishError::NoFolder { target: io_path(target), what });
         }
         Ok(_) => {}
     }
-    let ours = manifest_files(target);
+    let ours = manifest_files(target, command);
     let mut found = Vec::new();
     list(target, Path::new(""), &mut found).map_err(at)?;
     match found.into_iter().find(|file| !ours.contains(file)) {
@@ -58,10 +85,12 @@ pub fn may_replace(target: &Path) -> Result<(), PublishError> {
 /// Writes all files beside the target, then swaps. `files` are paths within the target, with `/`.
 ///
 /// # Errors
-/// A target that may not be replaced (unless `force`), or a file system that refuses; then the target is as it was.
-pub fn publish(files: &[(String, Vec<u8>)], target: &Path, force: bool) -> Result<(), PublishError> {
-    if !force {
-        may_replace(target)?;
+/// The current folder as a target, or a file system that refuses; then the target is as it was. Old results that cannot
+/// be removed after the swap.
+pub fn publish(files: &[(String, Vec<u8>)], target: &Path) -> Result<(), PublishError> {
+    let here = std::env::current_dir().and_then(fs::canonicalize);
+    if here.is_ok_and(|here| fs::canonicalize(target).is_ok_and(|target| target == here)) {
+        return Err(PublishError::CurrentFolder { target: io_path(target) });
     }
     let parent = match target.parent() {
         Some(parent) if !parent.as_os_str().is_empty() => parent,
@@ -86,10 +115,13 @@ pub fn publish(files: &[(String, Vec<u8>)], target: &Path, force: bool) -> Resul
     for folder in folders.iter().rev() {
         sync_folder(folder).map_err(|error| io_error(target, error))?;
     }
-    swap(fresh, target).map_err(|error| io_error(target, error))?;
+    let replaced = swap(fresh, target).map_err(|error| io_error(target, error))?;
     // The swap stands already; a parent that cannot be synced does not undo it.
     let _ = sync_folder(parent);
-    Ok(())
+    match replaced.map(|old| (remove(&old), old)) {
+        Some((Err(error), old)) => Err(PublishError::LeftOver { path: io_path(&old), error }),
+        _ => Ok(()),
+    }
 }
 
 fn new_folder(parent: &Path) -> io::Result<TempDir> {
@@ -100,15 +132,15 @@ fn new_folder(parent: &Path) -> io::Result<TempDir> {
     builder.tempdir_in(parent)
 }
 
-/// Puts the fresh folder where the target was; what was there goes with the fresh folder's old name.
-fn swap(fresh: TempDir, target: &Path) -> io::Result<()> {
+/// Puts the fresh folder where the target was; gives the place where what was there stands now.
+fn swap(fresh: TempDir, target: &Path) -> io::Result<Option<PathBuf>> {
     if fs::symlink_metadata(target).is_err() {
         fs::rename(fresh.path(), target)?;
         let _ = fresh.keep();
-        return Ok(());
+        return Ok(None);
     }
     if exchange(fresh.path(), target)? {
-        return fresh.close().or(Ok(()));
+        return Ok(Some(fresh.keep()));
     }
     let aside = fresh.path().with_extension("old");
     fs::rename(target, &aside)?;
@@ -117,7 +149,12 @@ fn swap(fresh: TempDir, target: &Path) -> io::Result<()> {
         return Err(error);
     }
     let _ = fresh.keep();
-    if aside.is_dir() { fs::remove_dir_all(&aside) } else { fs::remove_file(&aside) }
+    Ok(Some(aside))
+}
+
+/// Removes what was replaced, a folder or, with `--force`, anything else.
+fn remove(old: &Path) -> io::Result<()> {
+    if fs::symlink_metadata(old)?.is_dir() { fs::remove_dir_all(old) } else { fs::remove_file(old) }
 }
 
 /// Exchanges two paths at once; tells whether the file system can.
@@ -141,18 +178,23 @@ fn sync_folder(folder: &Path) -> io::Result<()> {
     if cfg!(unix) { File::open(folder)?.sync_all() } else { Ok(()) }
 }
 
-/// What a folder's `run.json` says is ours; nothing where there is none of ours.
-fn manifest_files(target: &Path) -> BTreeSet<String> {
+/// What a folder's `run.json` says is ours and of the same command; nothing where there is none.
+fn manifest_files(target: &Path, command: &str) -> BTreeSet<String> {
     #[derive(serde::Deserialize)]
     struct Ours {
         program: String,
+        command: String,
         files: BTreeSet<String>,
     }
     let text = fs::read(target.join("run.json")).unwrap_or_default();
     match serde_json::from_slice::<Ours>(&text) {
-        Ok(ours) if ours.program == "thawline" => ours.files,
+        Ok(ours) if ours.program == "thawline" && is_of(&ours.command, command) => ours.files,
         _ => BTreeSet::new(),
     }
+}
+
+fn is_of(line: &str, command: &str) -> bool {
+    line.split_whitespace().nth(1) == Some(command)
 }
 
 fn list(top: &Path, within: &Path, found: &mut Vec<String>) -> io::Result<()> {

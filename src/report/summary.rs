@@ -1,7 +1,7 @@
 //! `summary.json`: every number that the briefing says or a figure draws; `run.json`: how it came about.
 
 use super::SCHEMA_VERSION;
-use super::study::{Input, Study};
+use super::study::{Input, Origin, Study};
 use super::words::Answer;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
@@ -193,6 +193,31 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
         unlikely: unlikely.iter().map(|(about, why)| Notice { about, why }).collect(),
         left_out: LeftOut { counts: study.record.counts, water_years: study.record.skipped },
         files: files.to_vec(),
+    })
+}
+
+#[derive(Serialize)]
+struct DailyManifest<'a> {
+    schema_version: u32,
+    program: &'static str,
+    version: &'static str,
+    command: &'a str,
+    inputs: &'a [Input],
+    files: &'a [&'a str],
+}
+
+/// `run.json` of a daily table.
+///
+/// # Errors
+/// A text that JSON cannot hold: a fault of ours.
+pub fn daily_manifest_json(origin: &Origin, files: &[&str]) -> serde_json::Result<Vec<u8>> {
+    lines(&DailyManifest {
+        schema_version: SCHEMA_VERSION,
+        program: "thawline",
+        version: env!("CARGO_PKG_VERSION"),
+        command: &origin.command,
+        inputs: &origin.inputs,
+        files,
     })
 }
 

@@ -6,7 +6,7 @@ pub const TERMS: [(&str, &str); 15] = [
     ("Water year", "starts on the stated day and is named for the calendar year in which it ends"),
     (
         "Warming level",
-        "degrees added to the record's temperatures; the reference, 0 °C, is the record's own climate",
+        "degrees added to the record's temperatures, whose own climate is 0 °C; all levels are compared with the reference",
     ),
     (
         "Realization",

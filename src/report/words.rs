@@ -6,6 +6,9 @@ use crate::findings::{
 };
 use crate::season::Kind;
 
+/// A 5-95 % range of fewer pairs is their extremes.
+const LEAST_PAIRS_FOR_A_RANGE: usize = 20;
+
 /// The answer to the study's question.
 #[derive(Debug, Clone, PartialEq, serde::Serialize)]
 pub struct Answer {
@@ -73,12 +76,21 @@ fn verdict(findings: &Findings, headline: &MeasureFindings) -> String {
         );
     }
     match headline.outweighs {
-        Crossing::At { level_c } => format!(
-            "From about {} °C of warming on{}, the warming outweighs the precipitation spread of the {name}; up to there, \
-             precipitation outweighs the warming.",
-            signed(level_c, 1),
-            crossing_range(findings, headline.outweighs_range)
-        ),
+        Crossing::At { level_c, until_c } => {
+            let range = crossing_range(findings, headline.outweighs_range);
+            let from = signed(level_c, 1);
+            let (span, elsewhere) = match until_c {
+                None => (format!("From about {from} °C of warming on{range}"), "up to there"),
+                Some(until_c) => (
+                    format!("From about {from} °C{range} to {} °C of warming", signed(until_c, 1)),
+                    "elsewhere",
+                ),
+            };
+            format!(
+                "{span}, the warming outweighs the precipitation spread of the {name}; {elsewhere}, precipitation outweighs \
+                 the warming."
+            )
+        }
         Crossing::NotReached { up_to_c } => {
             let ratio = headline.levels.last().and_then(|level| level.signal_to_spread);
             let ratio = ratio.map_or(String::new(), |ratio| {
@@ -128,14 +140,21 @@ fn how_much(findings: &Findings, headline: &MeasureFindings, at: &LevelFindings)
         format!("; that is {}{error} times the half spread, so it {word} it", fixed(ratio.value, 2))
     });
     let decimals = amount_decimals(shift.q05.abs().max(shift.q95.abs()));
+    let range = if shift.pairs >= LEAST_PAIRS_FOR_A_RANGE {
+        format!(
+            ", 90 % of them between {} and {} mm",
+            signed(shift.q05, decimals),
+            signed(shift.q95, decimals)
+        )
+    } else {
+        String::new()
+    };
+    let realizations = if shift.pairs == 1 { "realization" } else { "realizations" };
     format!(
-        "At {}, the {} {change}{percent}: the median over {} realizations, each against itself, 90 % of them between {} \
-         and {} mm{ratio}.",
+        "At {}, the {} {change}{percent}: the median over {} {realizations}, each against itself{range}{ratio}.",
         level(at.level_c),
         period_name(findings, headline),
         shift.pairs,
-        signed(shift.q05, decimals),
-        signed(shift.q95, decimals),
     )
 }
 
@@ -157,6 +176,9 @@ fn yardstick(
             amount(spread.q05),
             amount(spread.q95)
         ));
+    }
+    if headline.precipitation_spread.is_none() {
+        return words;
     }
     words.push(match mean_change_sd_pct {
         Some(sd) if sd > 0.0 => format!(
@@ -183,6 +205,13 @@ fn yardstick(
             })
         })
         .collect();
+    let both = |at: &LevelFindings| {
+        at.signal_to_spread.is_some()
+            && at.signal_to_noise.is_some_and(|ratio| ratio.against_reference.is_some())
+    };
+    if !headline.levels.iter().any(both) {
+        return words;
+    }
     if hangs.is_empty() {
         words.push(
             "Measured against one standard deviation instead, as studies of emergence do, the verdict is the same at \
@@ -212,7 +241,8 @@ fn timing(findings: &Findings, at: usize) -> Option<String> {
     ))
 }
 
-/// Up to which elevation bands lose half or more of the headline measure at the level next to +2 degC.
+/// The bands that lose most and least of the headline measure, at the level nearest to 2 degC above the reference; bands
+/// whose reference median is below 10 mm have no percentage and are left out.
 fn elevation(findings: &Findings) -> Option<String> {
     let warmer = findings.reference + 1..findings.levels_c.len();
     let at = warmer.min_by(|a, b| {
@@ -244,18 +274,29 @@ fn elevation(findings: &Findings) -> Option<String> {
 }
 
 fn could_be_hidden(findings: &Findings, at: &LevelFindings) -> Option<String> {
-    let chances = at.chances?;
-    let (period, year) = (chances.period_below_reference?, chances.year_below_reference?);
-    let reaches = chances.reaches_reference_median?;
+    let [beyond, year_beyond, back] = towards_shift(at)?;
+    let side = if at.shift?.median.value < 0.0 { "below" } else { "above" };
     Some(format!(
-        "At {}, an independent warmed {}-year mean lies below a reference one with a chance of {}, a single warmed year \
-         below a single reference year with {}; {} of these realizations reach the reference's median all the same.",
+        "At {}, an independent {}-year mean lies {side} a reference one with a chance of {}, a single year {side} a single \
+         reference year with {}; {} of these realizations come back to the reference's median all the same.",
         level(at.level_c),
         findings.years,
-        chance(period),
-        chance(year),
-        chance(reaches)
+        chance(beyond),
+        chance(year_beyond),
+        chance(back)
     ))
+}
+
+/// The chances in the direction of the shift: that an independent period value, and a single year, lie on that side of a
+/// reference one, and that a realization comes back to the reference's median all the same. Nothing where there is no
+/// percentage to speak of, or no shift.
+pub fn towards_shift(at: &LevelFindings) -> Option<[Chance; 3]> {
+    at.percent_change?;
+    let is_fall = at.shift?.median.value < 0.0;
+    let chances = at.chances?;
+    let found =
+        [chances.period_below_reference?, chances.year_below_reference?, chances.reaches_reference_median?];
+    Some(if is_fall { found } else { found.map(Chance::opposite) })
 }
 
 /// The same for a table: `97 ± 1 %`, `> 99 %`, `< 1 %`.

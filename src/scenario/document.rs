@@ -18,6 +18,8 @@ pub struct Document<'t> {
     table: DeTable<'t>,
     places: HashMap<String, KeyPlace>,
     syntax_faults: Vec<Fault>,
+    /// First byte of every line.
+    line_starts: Vec<usize>,
 }
 
 impl<'t> Document<'t> {
@@ -36,7 +38,8 @@ impl<'t> Document<'t> {
             .collect();
         let mut places = HashMap::new();
         note_places("", &table, &mut places);
-        Self { table, places, syntax_faults }
+        let line_starts = std::iter::once(0).chain(text.match_indices('\n').map(|(at, _)| at + 1)).collect();
+        Self { table, places, syntax_faults, line_starts }
     }
 
     /// Adds the faults of the text as TOML. Where there are any, of the others only those are kept that lie wholly before
@@ -65,6 +68,12 @@ impl<'t> Document<'t> {
             }
             path = &path[..path.rfind(['.', '['])?];
         }
+    }
+
+    /// The line, from 1, on which a byte stands, and the line's first byte.
+    pub(super) fn line_at(&self, byte: usize) -> (usize, usize) {
+        let line = self.line_starts.partition_point(|start| *start <= byte);
+        (line, self.line_starts.get(line.saturating_sub(1)).copied().unwrap_or(0))
     }
 
     pub(super) fn key_span(&self, key: &str) -> Range<usize> {

@@ -19,6 +19,11 @@ pub struct Drawing<'a> {
     pub is_coloured: bool,
 }
 
+/// So many faults are drawn; the rest are counted.
+const MOST_DRAWN: usize = 50;
+/// A name or a found text is cut to so many characters.
+const LONGEST_SHOWN: usize = 300;
+
 /// A fault with its place written out, for a program to read.
 #[derive(Debug, Clone, PartialEq, Eq, Serialize)]
 pub struct Located {
@@ -38,28 +43,27 @@ pub struct Located {
     pub mend: String,
 }
 
-/// A place in a text: what it is called, the text, the line its first byte stands on, the bytes.
+/// One line of a text with the bytes at fault in it.
 struct Spot<'a> {
     file: &'a str,
     name: &'a str,
     text: &'a str,
-    first_line: usize,
+    line: usize,
     bytes: Range<usize>,
 }
 
 fn spot<'a>(fault: &'a Fault, drawing: &Drawing<'a>) -> Option<Spot<'a>> {
-    let in_scenario = |name: &'a str, bytes: Range<usize>| Spot {
-        file: drawing.file,
-        name,
-        text: drawing.text,
-        first_line: 1,
-        bytes,
+    let in_scenario = |name: &'a str, bytes: Range<usize>| {
+        let (line, start) = drawing.document.line_at(bytes.start);
+        let text = drawing.text.get(start..).unwrap_or("").lines().next().unwrap_or("");
+        let within = |at: usize| at.saturating_sub(start).min(text.len());
+        Spot { file: drawing.file, name, text, line, bytes: within(bytes.start)..within(bytes.end) }
     };
     match &fault.place {
         Place::Key(key) => drawing.document.value_span(key).map(|bytes| in_scenario(key, bytes)),
         Place::Span(bytes) => Some(in_scenario("", bytes.clone())),
         Place::Cell { file, line, column, text, bytes } => {
-            Some(Spot { file, name: column, text, first_line: *line, bytes: bytes.clone() })
+            Some(Spot { file, name: column, text, line: *line, bytes: bytes.clone() })
         }
         Place::File(_) => None,
     }
@@ -70,9 +74,7 @@ pub fn located(fault: &Fault, drawing: &Drawing<'_>) -> Located {
     let (file, line, column, name) = match spot(fault, drawing) {
         Some(spot) => {
             let before = spot.text.get(..spot.bytes.start).unwrap_or("");
-            let line = spot.first_line + before.matches('\n').count();
-            let column = before.rsplit('\n').next().unwrap_or("").chars().count() + 1;
-            (spot.file, line, column, spot.name)
+            (spot.file, spot.line, before.chars().count() + 1, spot.name)
         }
         None => match &fault.place {
             Place::File(file) => (file.as_str(), 0, 0, ""),
@@ -84,14 +86,21 @@ pub fn located(fault: &Fault, drawing: &Drawing<'_>) -> Located {
         file: file.to_owned(),
         line,
         column,
-        name: name.to_owned(),
-        found: fault.found.clone(),
+        name: shortened(name),
+        found: shortened(&fault.found),
         expected: fault.expected.clone(),
         mend: fault.mend.clone(),
     }
 }
 
-/// Draws all faults, in the order of the files they lie in and of their lines.
+fn shortened(text: &str) -> String {
+    match text.char_indices().nth(LONGEST_SHOWN) {
+        Some((end, _)) => format!("{}...", &text[..end]),
+        None => text.to_owned(),
+    }
+}
+
+/// Draws the faults, in the order of the files they lie in and of their lines; of very many the rest are counted.
 pub fn draw(faults: &[Fault], drawing: &Drawing<'_>) -> String {
     let mut placed: Vec<(Located, &Fault)> =
         faults.iter().map(|fault| (located(fault, drawing), fault)).collect();
@@ -99,7 +108,7 @@ pub fn draw(faults: &[Fault], drawing: &Drawing<'_>) -> String {
         .sort_by_key(|(place, _)| (place.file != drawing.file, place.file.clone(), place.line, place.column));
     let renderer = if drawing.is_coloured { Renderer::styled() } else { Renderer::plain() };
     let mut drawn = String::new();
-    for (place, fault) in &placed {
+    for (place, fault) in placed.iter().take(MOST_DRAWN) {
         let title = match (place.line, place.name.as_str()) {
             (0, _) => format!("{}: {}", place.file, place.found),
             (_, "") => place.found.clone(),
@@ -111,7 +120,7 @@ pub fn draw(faults: &[Fault], drawing: &Drawing<'_>) -> String {
             Some(spot) => title.element(
                 Snippet::source(spot.text)
                     .path(spot.file)
-                    .line_start(spot.first_line)
+                    .line_start(spot.line)
                     .annotation(AnnotationKind::Primary.span(spot.bytes).label(expected)),
             ),
             None => title.element(Level::NOTE.message(expected)),
@@ -119,6 +128,9 @@ pub fn draw(faults: &[Fault], drawing: &Drawing<'_>) -> String {
         let group = group.element(Level::HELP.message(fault.mend.as_str()));
         drawn += &renderer.render(&[group]);
         drawn += "\n\n";
+    }
+    if placed.len() > MOST_DRAWN {
+        drawn += &format!("and {} more\n", placed.len() - MOST_DRAWN);
     }
     let count = if placed.len() == 1 { "1 fault".to_owned() } else { format!("{} faults", placed.len()) };
     drawn + &format!("{count}; nothing was run\n")

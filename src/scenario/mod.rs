@@ -31,6 +31,9 @@ use crate::snow::SnowParams;
 use notes::Notes;
 use section::Section;
 
+/// A title is one line.
+const LONGEST_TITLE: usize = 200;
+
 /// Everything a scenario says, checked.
 #[derive(Debug, Clone)]
 pub struct Scenario {
@@ -103,6 +106,16 @@ pub fn read(document: &Document<'_>) -> Draft {
     let notes = Notes::default();
     let mut top = Section::top(document, &notes);
     let title = top.required_text("title", "a name for the study", "add title = \"...\" at the top");
+    if let Some(title) = &title
+        && (title.chars().any(char::is_control) || title.chars().count() > LONGEST_TITLE)
+    {
+        top.fault(Fault::key(
+            "title",
+            "a title with line breaks or control signs, or a very long one",
+            format!("one line of at most {LONGEST_TITLE} characters"),
+            "shorten it",
+        ));
+    }
     let seed = top.whole_or("seed", 1, 0..=i64::MAX as u64);
     let basin = basin::read(top.required_section("basin"));
     let is_southern = basin.as_ref().is_some_and(|basin| basin.latitude_deg < 0.0);

@@ -105,7 +105,7 @@ impl<'d> Section<'d> {
 
     /// A table that must be there.
     pub fn required_section(&mut self, key: &'static str) -> Self {
-        if !self.has(key) {
+        if self.table.is_some() && !self.has(key) {
             let (found, mend) = if self.path.is_empty() {
                 (format!("no [{key}]"), format!("add a line [{key}] and its keys below it"))
             } else {

@@ -4,9 +4,17 @@ use crate::fault::Fault;
 use crate::table::{Format, Row, Table, Tally};
 use crate::units::{DepthUnit, TemperatureUnit};
 use chrono::NaiveDate;
+use std::ops::RangeInclusive;
 
 /// No record is longer; a mistyped century would otherwise ask for millions of empty days.
 const LONGEST_RECORD_DAYS: usize = 400 * 366;
+
+/// No station has measured beyond these (records: -89.2 and 56.7 degC, World Meteorological Organization), degC.
+const POSSIBLE_C: RangeInclusive<f64> = -90.0..=60.0;
+/// Nor more in a day (record: 1825 mm, World Meteorological Organization), mm.
+const MOST_IN_A_DAY_MM: f64 = 2000.0;
+/// Nor more in a year (record: 26 470 mm in twelve months), mm.
+const MOST_IN_A_GAUGE_MM: f64 = 30_000.0;
 
 /// Forms of dates that are tried where the stated one does not fit, to suggest one that does.
 const DATE_FORMATS: [&str; 7] =
@@ -96,6 +104,8 @@ pub(super) struct RawDays {
     pub gauge_mm: Vec<Option<f64>>,
     /// Dates between the first and the last without a line of their own.
     pub absent_days: usize,
+    /// Cells with a value that no station has ever measured; they are taken as missing.
+    pub impossible_cells: usize,
 }
 
 /// Reads the cells of `text`. `file` names the file in faults.
@@ -109,31 +119,35 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
         TemperatureColumns::Extremes { tmin, tmax } => (tmin, tmax),
         TemperatureColumns::MeanAlone(mean) => (mean, mean),
     };
-    let mut names = vec![&columns.date, &tmin.column, &tmax.column, &columns.precipitation.column];
-    names.dedup();
-    let mut places = Vec::new();
-    let mut faults = Vec::new();
-    for name in names {
-        match table.column(name) {
-            Ok(place) => places.push(place),
-            Err(fault) => faults.push(fault),
-        }
-    }
-    if !faults.is_empty() {
-        return Err(faults);
-    }
-    let (date, tmin_at, tmax_at, gauge_at) = match places[..] {
-        [date, mean, gauge] => (date, mean, mean, gauge),
-        [date, tmin, tmax, gauge] => (date, tmin, tmax, gauge),
-        _ => {
-            return Err(vec![table.file_fault(
-                "one column named for two quantities",
-                "a column of its own for date, temperature and precipitation",
-                "name the columns in [weather]",
-            )]);
-        }
+    let date = table.column(&columns.date);
+    let tmin_at = table.column(&tmin.column);
+    let tmax_at = match &columns.temperature {
+        TemperatureColumns::Extremes { tmax, .. } => table.column(&tmax.column).map(Some),
+        TemperatureColumns::MeanAlone(_) => Ok(None),
     };
+    let gauge_at = table.column(&columns.precipitation.column);
+    let (Ok(date), Ok(tmin_at), Ok(tmax_at), Ok(gauge_at)) = (&date, &tmin_at, &tmax_at, &gauge_at) else {
+        return Err([date.err(), tmin_at.err(), tmax_at.err(), gauge_at.err()]
+            .into_iter()
+            .flatten()
+            .collect());
+    };
+    let (date, tmin_at, tmax_at, gauge_at) = (*date, *tmin_at, *tmax_at, *gauge_at);
+    let mut used = vec![date, tmin_at, gauge_at];
+    used.extend(tmax_at);
+    used.sort_unstable();
+    if used.windows(2).any(|pair| pair[0] == pair[1]) {
+        return Err(vec![table.file_fault(
+            "one column named for two quantities",
+            "a column of its own for the date, each temperature and precipitation",
+            "name the columns in [weather]; a file with the daily mean alone has tmean and no tmin and tmax",
+        )]);
+    }
 
+    let most_mm = match columns.precipitation.gauge {
+        Gauge::Daily => MOST_IN_A_DAY_MM,
+        Gauge::Accumulating { .. } => MOST_IN_A_GAUGE_MM,
+    };
     let mut tally = Tally::default();
     let mut days: Option<RawDays> = None;
     for row in table.rows() {
@@ -143,8 +157,15 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
         };
         let mut cell = |at: usize| number(&table, &row, at, &columns.missing, &mut tally);
         let tmin_c = cell(tmin_at).map(|value| tmin.unit.to_celsius(value));
-        let tmax_c = if tmax_at == tmin_at { tmin_c } else { cell(tmax_at).map(|v| tmax.unit.to_celsius(v)) };
+        let tmax_c = tmax_at.map_or(tmin_c, |at| cell(at).map(|value| tmax.unit.to_celsius(value)));
         let gauge_mm = cell(gauge_at).map(|value| columns.precipitation.unit.to_millimetres(value));
+        let mut impossible_cells = 0;
+        let mut possible = |value: Option<f64>, range: RangeInclusive<f64>| {
+            impossible_cells += usize::from(value.is_some_and(|value| !range.contains(&value)));
+            value.filter(|value| range.contains(value))
+        };
+        let (tmin_c, tmax_c) = (possible(tmin_c, POSSIBLE_C), possible(tmax_c, POSSIBLE_C));
+        let gauge_mm = possible(gauge_mm, f64::MIN..=most_mm);
         if columns.precipitation.gauge == Gauge::Daily && gauge_mm.is_some_and(|amount| amount < 0.0) {
             tally.push(table.cell_fault(
                 &row,
@@ -159,7 +180,9 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
             tmax_c: Vec::new(),
             gauge_mm: Vec::new(),
             absent_days: 0,
+            impossible_cells: 0,
         });
+        days.impossible_cells += impossible_cells;
         let index = (day - days.first).num_days();
         let due = days.tmin_c.len();
         let index = usize::try_from(index).ok().filter(|index| *index >= due && *index < LONGEST_RECORD_DAYS);

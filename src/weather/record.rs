@@ -21,6 +21,8 @@ pub struct Counts {
     pub days: usize,
     /// Dates in between without a line.
     pub absent_days: usize,
+    /// Cells beyond what any station has measured; they are taken as missing.
+    pub impossible_cells: usize,
     /// Days without a full pair of temperatures.
     pub temperature_missing_days: usize,
     /// Days on which the minimum stood above the maximum; both are taken as missing.
@@ -102,6 +104,7 @@ pub fn read(
         last: date_of(days.first, mean_c.len()),
         days: mean_c.len(),
         absent_days: days.absent_days,
+        impossible_cells: days.impossible_cells,
         temperature_missing_days: no_temperature.iter().filter(|missing| **missing).count(),
         crossed_temperature_days: crossed,
         interpolated_days: 0,

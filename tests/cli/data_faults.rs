@@ -163,3 +163,49 @@ fn the_same_record_in_other_units() {
     let (a, b) = (median("output/scenario/summary.json"), median("other/summary.json"));
     assert!(a > 50.0 && (a - b).abs() < 0.5, "{a} mm against {b} mm");
 }
+
+/// A column cannot be two quantities at once.
+#[test]
+fn one_column_for_two_quantities() {
+    for (from, to) in
+        [("\"tmax_c\"", "\"tmin_c\""), ("\"tmax_c\"", "\"precip_mm\""), ("\"precip_mm\"", "\"date\"")]
+    {
+        let basin = Basin::new();
+        basin.exchange(from, to);
+        let ended = basin.run("check scenario.toml");
+        assert_eq!(ended.status, 3, "{from} as {to}");
+        assert!(ended.stderr.contains("one column named for two quantities"), "{}", ended.stderr);
+    }
+}
+
+/// Values that no station has measured are taken as missing, counted and said; the study runs on what is left.
+#[test]
+fn impossible_values_are_missing_and_said() {
+    let basin = Basin::new();
+    let plain = basin.run("daily scenario.toml");
+    let broken =
+        weather(3).replacen(",6.0\n", ",1e300\n", 1).replace("2001-05-06,", "2001-05-06,-999,999,0.0\n#");
+    basin.write("weather.csv", &broken);
+    let ended = basin.run("study scenario.toml");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    assert!(ended.stderr.contains("3 cells beyond"), "{}", ended.stderr);
+    let daily = basin.run("daily scenario.toml");
+    assert_eq!(daily.stdout.lines().count(), plain.stdout.lines().count());
+    assert_ne!(daily.stdout, plain.stdout);
+}
+
+/// Ten thousand bands, or a scenario of nothing but faults, are answered at once.
+#[test]
+fn too_much_of_everything() {
+    let basin = Basin::new();
+    let bands: String = (0..10_000).map(|band| format!("{},{},1\n", band, band + 1)).collect();
+    basin.write("bands.csv", &format!("lower_m,upper_m,area_km2\n{bands}"));
+    let ended = basin.run("check scenario.toml");
+    assert_eq!(ended.status, 3);
+    assert!(ended.stderr.contains("more than 1000 bands"), "{}", ended.stderr);
+    let keys: String = (0..20_000).map(|key| format!("k{key} = 1\n")).collect();
+    basin.write("scenario.toml", &keys);
+    let ended = basin.run("check scenario.toml");
+    assert_eq!(ended.status, 3);
+    assert!(ended.stderr.contains("20003 faults") && ended.stderr.len() < 50_000, "{}", ended.stderr.len());
+}

@@ -2,6 +2,7 @@
 #![cfg(unix)]
 
 use super::basin::Basin;
+use std::io::{BufRead, BufReader};
 use std::process::{Command, Stdio};
 use std::thread::sleep;
 use std::time::Duration;
@@ -30,4 +31,23 @@ fn an_interrupted_study_leaves_earlier_results_whole() {
             "nothing half-published"
         );
     }
+}
+
+/// The stage after the run, in which many realizations are resampled, stops as well.
+#[test]
+fn interrupted_while_it_answers() {
+    let basin = Basin::new();
+    basin.exchange("count = 12", "count = 10000");
+    basin.exchange("years = 5", "years = 1");
+    let mut child = Command::new(env!("CARGO_BIN_EXE_thawline"))
+        .args(["study", "scenario.toml"])
+        .current_dir(basin.path())
+        .stderr(Stdio::piped())
+        .spawn()
+        .unwrap();
+    let mut lines = BufReader::new(child.stderr.take().unwrap()).lines();
+    assert!(lines.any(|line| line.unwrap().starts_with("answering")), "the run never came to its questions");
+    assert!(Command::new("kill").args(["-INT", &child.id().to_string()]).status().unwrap().success());
+    assert_eq!(child.wait().unwrap().code(), Some(130));
+    assert!(!basin.path().join("output/scenario").exists());
 }

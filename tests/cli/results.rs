@@ -142,3 +142,38 @@ fn start_and_check() {
     assert_eq!(basin.run("start demo").status, 4);
     assert_eq!(basin.read("demo/scenarios/alder-fork.toml"), "title = \"mine\"");
 }
+
+/// A study's results are no daily table's to replace, and a link is no folder.
+#[test]
+fn other_commands_and_links() {
+    let basin = Basin::new();
+    assert_eq!(basin.run("study scenario.toml --into out").status, 0);
+    assert_eq!(basin.run("daily scenario.toml --into out").status, 4);
+    assert!(basin.path().join("out/briefing.html").is_file());
+    assert_eq!(basin.run("study scenario.toml --into . --force").status, 4);
+    basin.write("file", "a user's own");
+    assert_eq!(basin.run("study scenario.toml --into file --force").status, 0);
+    assert!(basin.path().join("file/run.json").is_file());
+    #[cfg(unix)]
+    {
+        std::os::unix::fs::symlink("out", basin.path().join("link")).unwrap();
+        let ended = basin.run("study scenario.toml --into link");
+        assert_eq!(ended.status, 4);
+        assert!(ended.stderr.contains("a link"), "{}", ended.stderr);
+    }
+    let hidden = fs::read_dir(basin.path())
+        .unwrap()
+        .filter(|entry| entry.as_ref().unwrap().file_name().to_string_lossy().starts_with(".thawline"));
+    assert_eq!(hidden.count(), 0, "nothing is left beside the results");
+}
+
+/// The command in the manifest can be pasted into a shell.
+#[test]
+fn a_path_with_spaces_is_quoted() {
+    let basin = Basin::new();
+    basin.write("my scenario's.toml", super::basin::SCENARIO);
+    let mut command = basin.command("study --into out");
+    assert_eq!(super::basin::ended(command.arg("my scenario's.toml")).status, 0);
+    let manifest: serde_json::Value = serde_json::from_str(&basin.read("out/run.json")).unwrap();
+    assert_eq!(manifest["command"], r"thawline study 'my scenario'\''s.toml'");
+}

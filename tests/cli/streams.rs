@@ -64,6 +64,7 @@ fn a_scenario_from_standard_input() {
 fn json_documents() {
     let basin = Basin::new();
     let parse = |text: &str| serde_json::from_str::<serde_json::Value>(text).unwrap();
+    assert_eq!(parse(&basin.run("study --json").stdout)["exit_status"], 2);
     let done = parse(&basin.run("study scenario.toml --json").stdout);
     assert_eq!((done["status"].as_str(), done["schema_version"].as_u64()), (Some("done"), Some(1)));
     assert!(done["answer"]["verdict"].as_str().unwrap().contains("1 April SWE"));

@@ -79,3 +79,47 @@ fn a_basin_without_snow() {
     assert_eq!(melt_out["years_undefined"][0], 60);
     assert!(page.contains("12 none"));
 }
+
+/// Cooler levels are not called warmer, a rise is a rise, and a study that compares nothing claims nothing.
+#[test]
+fn other_levels_than_warmer_ones() {
+    let basin = Basin::new();
+    basin.exchange("count = 12", "count = 40");
+    basin.exchange("levels_c = [0, 2]", "levels_c = [-2]");
+    let (cooler, _) = study(&basin, "scenario.toml");
+    assert!(cooler["answer"]["amounts"][0].as_str().unwrap().contains("rises by"));
+    let chance = cooler["answer"]["chances"][0].as_str().unwrap();
+    assert!(chance.contains("lies above a reference one") && !chance.contains("warmed"), "{chance}");
+    assert!(cooler["answer"]["verdict"].as_str().unwrap().contains("cannot be said"));
+
+    basin.exchange("levels_c = [-2]", "levels_c = [0]");
+    let (alone, page) = study(&basin, "scenario.toml");
+    assert_eq!(alone["answer"]["amounts"].as_array().map(Vec::len), Some(0));
+    assert!(!page.contains("the verdict is the same at every level"));
+}
+
+/// Where rising precipitation lifts the shift and lets it fall again, the verdict ends where the ratio does.
+#[test]
+fn a_verdict_that_does_not_last() {
+    let basin = Basin::new();
+    basin.exchange("count = 12", "count = 60");
+    basin.exchange(
+        "levels_c = [0, 2]",
+        "levels_c = [0, 2, 4, 6, 8, 10, 12, 13, 14]\nprecipitation_change_pct_per_c = 9.0",
+    );
+    basin.exchange("station_elevation_m = 2000", "station_elevation_m = 900");
+    let (summary, _) = study(&basin, "scenario.toml");
+    let headline = &summary["findings"]["basin"][0];
+    let ratios: Vec<f64> = (1..9)
+        .map(|level| headline["levels"][level]["signal_to_spread"]["value"].as_f64().unwrap())
+        .collect();
+    let first = ratios.iter().position(|ratio| *ratio > 1.0).unwrap();
+    let falls_back = ratios[first..].iter().any(|ratio| *ratio <= 1.0);
+    assert!(falls_back, "the case no longer shows what it is for: {ratios:?}");
+    let until = headline["outweighs"]["until_c"].as_f64().unwrap();
+    let verdict = summary["answer"]["verdict"].as_str().unwrap();
+    assert!(
+        verdict.contains(&format!("to +{until:.1} °C of warming")) && verdict.contains("elsewhere"),
+        "{verdict}"
+    );
+}

@@ -2,7 +2,7 @@
 
 use super::super::numbers::{DASH, days_moved, fixed, level, signed};
 use super::super::study::Study;
-use super::super::words::{Answer, chance_in_table};
+use super::super::words::{Answer, chance_in_table, towards_shift};
 use crate::findings::{Estimate, Findings, MeasureFindings};
 use maud::{Markup, html};
 
@@ -29,8 +29,9 @@ fn by_level(findings: &Findings, headline: &MeasureFindings) -> Markup {
     html! {
         div.scroll { table {
             caption {
-                "Median changes from the reference. The last two columns compare different realizations, as if the future \
-                 drew its own weather; > and < are 95 % bounds where no pair, or every pair, counts."
+                "Median changes from the reference. The last two columns: chance that a value of another realization lies \
+                 beyond the reference one in the direction of the change, as if the future drew its own weather, and \
+                 share of realizations that come back to the reference's median all the same; > and < are 95 % bounds."
             }
             thead { tr {
                 th scope="col" { "Warming" }
@@ -38,8 +39,8 @@ fn by_level(findings: &Findings, headline: &MeasureFindings) -> Markup {
                 th scope="col" { "Times the" br; "half spread" }
                 th scope="col" { "Half of the" br; "net melt" }
                 th scope="col" { "Melt-out" }
-                th scope="col" { "Warmed " (years) "-year value" br; "below a reference one" }
-                th scope="col" { "Warmed ones that reach" br; "the reference's median" }
+                th scope="col" { "Beyond an independent" br; "reference " (years) "-year value" }
+                th scope="col" { "Back at the" br; "reference's median" }
             } }
             tbody { @for (at, found) in headline.levels.iter().enumerate() { @if let Some(shift) = found.shift { tr {
                 th scope="row" { (level(found.level_c)) }
@@ -50,9 +51,9 @@ fn by_level(findings: &Findings, headline: &MeasureFindings) -> Markup {
                 td { (or_dash(found.signal_to_spread.map(ratio))) }
                 td { (or_dash(moved("melt_d50_day", at))) }
                 td { (or_dash(moved("melt_out_day", at))) }
-                @let chances = found.chances;
-                td { (or_dash(chances.and_then(|chances| chances.period_below_reference).map(chance_in_table))) }
-                td { (or_dash(chances.and_then(|chances| chances.reaches_reference_median).map(chance_in_table))) }
+                @let chances = towards_shift(found);
+                td { (or_dash(chances.map(|[beyond, _, _]| chance_in_table(beyond)))) }
+                td { (or_dash(chances.map(|[_, _, back]| chance_in_table(back)))) }
             } } } }
         } }
     }
