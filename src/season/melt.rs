@@ -66,7 +66,7 @@ fn first_day_with(block: &YearBlock, column: usize, amount_mm: f64) -> f64 {
     (low + 1) as f64
 }
 
-/// Half-gone day, melt-out and the last day with snow.
+/// Half-gone day, melt-out and the last day with snow, which is asked of the basin alone.
 fn departure(block: &YearBlock, peaks: &Peaks, column: usize) -> [f64; 3] {
     let swe = |day: usize| block.swe_mm[(day - 1) * block.width + column];
     let (peak, peak_day) = (peaks.swe_mm[column], peaks.day[column] as usize);
@@ -76,7 +76,11 @@ fn departure(block: &YearBlock, peaks: &Peaks, column: usize) -> [f64; 3] {
         if is_basin { swe <= BASIN_MELT_OUT_SHARE * peak } else { swe < BARE_MM }
     };
     let melt_out = half_gone.and_then(|from| (from..=block.days).find(|day| is_out(swe(*day))));
+    let [half_gone, melt_out] = [half_gone, melt_out].map(|day| day.map_or(NOT_GONE, |day| day as f64));
+    if !is_basin {
+        return [half_gone, melt_out, NONE];
+    }
     let was_bare = (peak_day..=block.days).any(|day| swe(day) < BARE_MM);
     let last_snow = (1..=block.days).rev().find(|day| was_bare && swe(*day) >= BARE_MM);
-    [half_gone, melt_out, last_snow].map(|day| day.map_or(NOT_GONE, |day| day as f64))
+    [half_gone, melt_out, last_snow.map_or(NOT_GONE, |day| day as f64)]
 }
