@@ -10,6 +10,7 @@ use crate::fault::Fault;
 use crate::figures::{FIGURES, Setting};
 use crate::findings::{Findings, Questions, answer};
 use crate::perturb::YearBlocks;
+use crate::report::numbers::counted;
 use crate::report::{
     Answer, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html, manifest_json,
     publish, summary_json, tables,
@@ -48,11 +49,11 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     }
 
     progress.stage(&format!(
-        "running {} realizations of {} years under {} levels and {} bands",
-        scenario.realizations.count,
-        scenario.realizations.years,
-        scenario.warming.levels_c.len(),
-        ready.basin.bands.len()
+        "running {} of {} under {} and {}",
+        counted(scenario.realizations.count as usize, "realization"),
+        counted(scenario.realizations.years, "year"),
+        counted(scenario.warming.levels_c.len(), "level"),
+        counted(ready.basin.bands.len(), "band")
     ));
     let findings = in_pool(shared, || find(&ready, &measures, &progress))??;
 

@@ -18,7 +18,8 @@ fn spoken_of(findings: &Findings, measure: &MeasureFindings) -> Option<usize> {
     others.or((findings.reference > 0).then_some(0))
 }
 
-/// `1 April SWE is 112 mm (27 %) lower at +2 °C; from +1.4 °C on, the shift outweighs the precipitation spread`.
+/// `1 April SWE is 112 mm (27 %) lower at +2 °C; only from +1.4 °C on does the shift outweigh the
+/// precipitation spread`.
 pub(super) fn of_amount(findings: &Findings, measure: &MeasureFindings) -> String {
     let title = sentence(&measure.measure.title);
     let spoken = spoken_of(findings, measure).and_then(|at| measure.levels.get(at));
@@ -105,7 +106,13 @@ fn against_spread(findings: &Findings, measure: &MeasureFindings, subject: &str)
         Crossing::At { level_c, until_c } => {
             let until =
                 until_c.map_or_else(|| "on".to_owned(), |until_c| format!("to {}", between_levels(until_c)));
-            format!("from {} {until}, {subject} outweighs the precipitation spread", between_levels(level_c))
+            let from = between_levels(level_c);
+            let first_warmer_c = findings.levels_c.get(findings.reference + 1);
+            if first_warmer_c.is_some_and(|warmer_c| *warmer_c < level_c) {
+                format!("only from {from} {until} does {subject} outweigh the precipitation spread")
+            } else {
+                format!("from {from} {until}, {subject} outweighs the precipitation spread")
+            }
         }
         Crossing::NotReached { up_to_c } => {
             format!("up to {}, {subject} does not outweigh the precipitation spread", level(up_to_c))

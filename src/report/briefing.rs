@@ -5,6 +5,7 @@ mod assumed;
 mod levels;
 mod record;
 
+use super::numbers::counted;
 use super::study::Study;
 use super::words::Answer;
 use super::{cautions, terms};
@@ -32,8 +33,8 @@ pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg]) -> Vec
             body {
                 main {
                     p.over {
-                        (findings.realizations) " realizations of " (findings.years) " water years under "
-                        (findings.levels_c.len()) " warming levels, " (study.basin.bands.len()) " elevation bands"
+                        (counted(findings.realizations, "realization")) " of " (counted(findings.years, "water year")) " under "
+                        (counted(findings.levels_c.len(), "warming level")) ", " (counted(study.basin.bands.len(), "elevation band"))
                     }
                     h1 { (study.title) }
                     p.notice {

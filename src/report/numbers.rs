@@ -58,6 +58,11 @@ pub fn date(day: f64, starts: WaterYearStart) -> String {
     format!("{} {}", date.day(), MONTHS[date.month0() as usize])
 }
 
+/// `1 band`, `10 bands`.
+pub fn counted(count: usize, one: &str) -> String {
+    format!("{} {one}{}", fixed(count as f64, 0), if count == 1 { "" } else { "s" })
+}
+
 /// `12 days earlier`, `1 day later`, `no change to the day`.
 pub fn days_moved(days: f64) -> String {
     let whole = days.abs().round();

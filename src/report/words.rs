@@ -258,6 +258,9 @@ fn elevation(findings: &Findings) -> Option<String> {
             Some((band.band.lower_m, band.band.upper_m, percent))
         })
         .collect();
+    if changes.len() < 2 {
+        return None;
+    }
     let most = changes.iter().min_by(|a, b| a.2.total_cmp(&b.2))?;
     let least = changes.iter().max_by(|a, b| a.2.total_cmp(&b.2))?;
     let title = &findings.basin.first()?.measure.title;

@@ -61,7 +61,9 @@ impl fmt::Display for Why {
             Self::MissingDays { days } => {
                 write!(f, "temperature or precipitation missing on {}", days_in_words(*days))
             }
-            Self::BeyondRecord { days } => write!(f, "{} of it lie outside the record", days_in_words(*days)),
+            Self::BeyondRecord { days } => {
+                write!(f, "the record begins or ends within it and lacks {}", days_in_words(*days))
+            }
             Self::TemperatureGap { from, days } => {
                 write!(f, "no temperatures for {} from {from}", days_in_words(*days))
             }
