@@ -90,8 +90,11 @@ fn titles_turn_round_when_the_numbers_do() {
     let titles =
         |study: &Study<'_>| study.draw("Alder Fork", 10).into_iter().map(|svg| svg.title).collect::<Vec<_>>();
     let falling = titles(&PLAIN);
-    assert!(falling[0].starts_with("1 April SWE is 120 mm (28 %) lower at +2 °C; from +1."), "{falling:?}");
-    assert!(falling[0].ends_with("on, the shift outweighs the precipitation spread"), "{falling:?}");
+    assert!(
+        falling[0].starts_with("1 April SWE is 120 mm (28 %) lower at +2 °C; only from +1."),
+        "{falling:?}"
+    );
+    assert!(falling[0].ends_with("on does the shift outweigh the precipitation spread"), "{falling:?}");
     assert!(
         falling[1].starts_with("Half of the melt comes 12 days and melt-out 8 days earlier at +2 °C"),
         "{falling:?}"
