@@ -4,6 +4,7 @@
 //! The rooms stand on floors; each knows only the floors below it. `cli` reads what was typed through `scenario`,
 //! `ensemble` runs the `snow` engine over every warming level and realization of `perturb`, `season` measures its year
 //! blocks, `findings` answers questions, `figures` and `report` turn the answers into bytes.
+#![forbid(unsafe_code)]
 #![deny(clippy::print_stdout, clippy::print_stderr)]
 
 pub mod basin;

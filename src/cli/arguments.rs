@@ -6,12 +6,17 @@ use std::path::PathBuf;
 
 const EXAMPLES: &str = "\
 Examples:
-  $ thawline study scenarios/alder-fork.toml      figures, tables and a briefing into output/alder-fork/
-  $ thawline check scenarios/alder-fork.toml      what would be used, and what was found in the record
+  $ thawline study scenarios/alder-fork.toml
+      figures, tables and a briefing into output/alder-fork/
+  $ thawline check scenarios/alder-fork.toml
+      what would be used, and what was found in the record
   $ thawline daily scenarios/alder-fork.toml > alder-fork-daily.csv
+      every day of every band of the record, without any warming
 
-Exit status: 0 done, 1 a fault of thawline, 2 command line, 3 the scenario or its data, 4 the file system,
-130 interrupted. A planning aid: not for flood forecasting or the operation of dams.";
+Exit status: 0 done, 1 a fault of thawline, 2 command line, 3 the scenario or
+its data, 4 the file system, 130 interrupted.
+
+A planning aid: not for flood forecasting or the operation of dams.";
 
 /// How much snow water is left, and how much earlier it melts, as a basin warms.
 #[derive(Debug, Parser)]

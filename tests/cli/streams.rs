@@ -37,7 +37,7 @@ fn exit_statuses_of_the_command_line() {
 fn help_fits_and_its_examples_name_real_commands() {
     let help = Basin::new().run("--help").stdout;
     let longest = help.lines().map(|line| line.chars().count()).max();
-    assert!(longest <= Some(120), "{longest:?}");
+    assert!(longest <= Some(80), "{longest:?}");
     let examples: Vec<&str> =
         help.lines().filter_map(|line| line.trim().strip_prefix("$ thawline ")).collect();
     assert!(examples.len() >= 3, "{help}");

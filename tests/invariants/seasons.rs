@@ -54,10 +54,7 @@ fn expected(block: &YearBlock, column: usize, settings: &SeasonSettings) -> Vec<
         ("melt_d90_day", naive::melt_share_day(&swe, &net_melt, 0.9)),
         ("half_gone_day", naive::half_gone(&swe)),
         ("melt_out_day", naive::melt_out(&swe, place)),
-        (
-            "last_snow_day",
-            if place == naive::Place::Basin { naive::last_snow(&swe) } else { naive::When::None },
-        ),
+        ("last_snow_day", if place == Place::Basin { naive::last_snow(&swe) } else { When::None }),
     ] {
         all.push((measure.to_owned(), number(when)));
     }
