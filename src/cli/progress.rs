@@ -3,7 +3,7 @@
 use super::arguments::Shared;
 use super::output::complain;
 use crate::ensemble::Watch;
-use indicatif::{ProgressBar, ProgressDrawTarget, ProgressStyle};
+use indicatif::{ProgressBar, ProgressDrawTarget, ProgressState, ProgressStyle};
 use std::io::IsTerminal;
 use std::sync::OnceLock;
 use std::sync::atomic::{AtomicBool, Ordering};
@@ -58,12 +58,15 @@ impl Progress {
 impl Watch for Progress {
     fn begins(&self, realizations: u32) {
         if matches!(self.show, Show::Bar) {
-            let style = ProgressStyle::with_template(
-                "{bar:32} {pos} of {len} realizations, {per_sec:.0}, {eta} left",
-            );
+            let style =
+                ProgressStyle::with_template("{bar:32} {pos} of {len} realizations, {rate}, {eta} left")
+                    .unwrap_or_else(|_| ProgressStyle::default_bar())
+                    .with_key("rate", |state: &ProgressState, text: &mut dyn std::fmt::Write| {
+                        let _ = write!(text, "{:.0} a second", state.per_sec());
+                    });
             let bar =
                 ProgressBar::with_draw_target(Some(u64::from(realizations)), ProgressDrawTarget::stderr());
-            self.bar.get_or_init(|| bar.with_style(style.unwrap_or_else(|_| ProgressStyle::default_bar())));
+            self.bar.get_or_init(|| bar.with_style(style));
         }
     }
 
