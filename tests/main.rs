@@ -8,4 +8,5 @@ mod golden;
 mod invariants;
 mod naive;
 mod naive_season;
+mod record;
 mod vectors;

@@ -1,6 +1,6 @@
 //! The program as a user runs it: whole commands, their output, their files and their exit status.
 
-mod basin;
+pub mod basin;
 mod data_faults;
 mod interrupt;
 mod results;

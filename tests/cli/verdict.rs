@@ -32,6 +32,8 @@ fn both_demos_speak_for_their_numbers() {
         main["findings"]["basin"][0]["levels"][level]["signal_to_spread"]["value"].as_f64().unwrap()
     };
     assert!(ratio(1) < 1.0 && ratio(2) > 1.0);
+    hold_to_definitions(&main);
+    hold_to_definitions(&cold);
     let crossing = main["findings"]["basin"][0]["outweighs"]["level_c"].as_f64().unwrap();
     assert!(
         (crossing - (1.0 + (1.0 - ratio(1)) / (ratio(2) - ratio(1)))).abs() < 1e-12,
@@ -122,4 +124,36 @@ fn a_verdict_that_does_not_last() {
         verdict.contains(&format!("to +{until:.1} °C of warming")) && verdict.contains("elsewhere"),
         "{verdict}"
     );
+}
+
+/// The headline's numbers follow from each other as the method defines them; 1e-9 is rounding.
+fn hold_to_definitions(summary: &Value) {
+    let headline = &summary["findings"]["basin"][0];
+    let number = |value: &Value| value.as_f64().unwrap();
+    let spread = &headline["precipitation_spread"];
+    let [low, median, high] = ["q05", "q50", "q95"].map(|quantile| number(&spread[quantile]));
+    let levels = headline["levels"].as_array().unwrap();
+    assert_eq!(number(&levels[0]["periods"]["q50"]), median, "the first level is the reference");
+    for level in &levels[1..] {
+        let shift = number(&level["shift"]["median"]["value"]);
+        let half = if shift < 0.0 { median - low } else { high - median };
+        assert!((number(&level["signal_to_spread"]["value"]) - shift.abs() / half).abs() < 1e-9);
+        assert!((number(&level["percent_change"]) - 100.0 * shift / median).abs() < 1e-9);
+        let shares = &level["period_variance_shares"];
+        let sum: f64 = ["level", "realization", "residual"].map(|share| number(&shares[share])).iter().sum();
+        assert!((sum - 1.0).abs() < 1e-9);
+        for chance in ["period_below_reference", "year_below_reference", "reaches_reference_median"] {
+            let chance = &level["chances"][chance];
+            let is_certain = [0.0, 1.0].contains(&number(&chance["value"]));
+            assert_eq!(
+                chance["bound"].is_null(),
+                !is_certain,
+                "a bound stands where no realization counts: {chance}"
+            );
+            if is_certain {
+                // 1 - 0.05^(1/300) by logarithm tables: 0.009936.
+                assert!((number(&chance["bound"]) - 0.009936).abs() < 1e-6);
+            }
+        }
+    }
 }
