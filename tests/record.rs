@@ -33,8 +33,11 @@ fn read(text: &str) -> Record {
     thawline::weather::read("weather.csv", text, &columns, start, day(4, 1), Limits::default()).unwrap()
 }
 
-/// Six water years, in which the lines of some dates are changed: `(from, days, change)`.
-fn record_with(changes: &[(&str, i64, fn(&str) -> Option<String>)]) -> Record {
+/// From which date, for how many days, and what becomes of each line.
+type Change<'a> = (&'a str, i64, fn(&str) -> Option<String>);
+
+/// Six water years, in which the lines of some dates are changed.
+fn record_with(changes: &[Change<'_>]) -> Record {
     let mut text = String::new();
     for line in weather(6).lines() {
         let date = chrono::NaiveDate::parse_from_str(&line[..10.min(line.len())], "%Y-%m-%d").ok();

@@ -4,6 +4,9 @@ use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Ranked, Resamples, standard_deviation};
 use serde::Serialize;
 
+/// A smaller spread is rounding, mm or days.
+const LEAST_SPREAD: f64 = 1e-9;
+
 /// The spread of a measure at the reference.
 ///
 /// Over realizations it is the precipitation spread 'with its own temperatures': resampled years bring their
@@ -53,7 +56,7 @@ pub fn signal_to_spread(
     shifts: &[Option<f64>],
     spreads: &[Option<[f64; 3]>],
 ) -> Option<(Estimate, Vec<Option<f64>>)> {
-    let ratio = |shift: f64, half: f64| (half > 0.0 && half.is_finite()).then(|| shift.abs() / half);
+    let ratio = |shift: f64, half: f64| (half > LEAST_SPREAD && half.is_finite()).then(|| shift.abs() / half);
     let value = ratio(shift, spread.half_towards(shift))?;
     let resampled: Vec<Option<f64>> = shifts
         .iter()
