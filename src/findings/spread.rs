@@ -94,7 +94,8 @@ pub fn signal_to_noise(reference: &[f64], warmed: &[f64]) -> SignalToNoise {
     let changes: Vec<f64> = pairs.iter().map(|(before, after)| after - before).collect();
     let before: Vec<f64> = pairs.iter().map(|(before, _)| *before).collect();
     let mean = (changes.iter().sum::<f64>() / changes.len() as f64).abs();
-    let over =
-        |values: &[f64]| standard_deviation(values).filter(|deviation| *deviation > 0.0).map(|d| mean / d);
+    let over = |values: &[f64]| {
+        standard_deviation(values).filter(|deviation| *deviation > LEAST_SPREAD).map(|d| mean / d)
+    };
     SignalToNoise { against_reference: over(&before), paired: over(&changes) }
 }
