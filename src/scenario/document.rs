@@ -27,15 +27,13 @@ impl<'t> Document<'t> {
     pub fn parse(text: &'t str) -> Self {
         let (table, errors) = DeTable::parse_recoverable(text);
         let table = table.into_inner();
-        let syntax_faults = errors
-            .iter()
-            .map(|error| Fault {
-                place: Place::Span(error.span().unwrap_or(0..0)),
-                found: error.message().to_owned(),
-                expected: "TOML: key = value, one a line, under [table] lines".to_owned(),
-                mend: "quote texts, write lists in [ ], and name each key once".to_owned(),
-            })
-            .collect();
+        let faults = errors.iter().map(|error| Fault {
+            place: Place::Span(error.span().unwrap_or(0..0)),
+            found: error.message().to_owned(),
+            expected: "TOML: key = value, one a line, under [table] lines".to_owned(),
+            mend: "quote texts, write lists in [ ], and name each key once".to_owned(),
+        });
+        let syntax_faults = without_echoes(faults.collect());
         let mut places = HashMap::new();
         note_places("", &table, &mut places);
         let line_starts = std::iter::once(0).chain(text.match_indices('\n').map(|(at, _)| at + 1)).collect();
@@ -83,6 +81,31 @@ impl<'t> Document<'t> {
     pub(super) fn table(&self) -> &DeTable<'t> {
         &self.table
     }
+}
+
+/// A list that is never closed makes a fault of every word down to the end of the text. Of those only the first is kept,
+/// where the list ought to have ended.
+fn without_echoes(mut faults: Vec<Fault>) -> Vec<Fault> {
+    let is_unclosed = |fault: &Fault| fault.found.starts_with("unclosed array");
+    let is_echo = |fault: &Fault| {
+        ["missing comma between array", "string values must be quoted", "unexpected `=` in array"]
+            .iter()
+            .any(|start| fault.found.starts_with(start))
+    };
+    faults.sort_by_key(|fault| match &fault.place {
+        Place::Span(bytes) => bytes.start,
+        _ => 0,
+    });
+    if faults.iter().any(is_unclosed) {
+        let echoes = faults.iter().rev().take_while(|fault| is_echo(fault) || is_unclosed(fault)).count();
+        let first = faults.len() - echoes;
+        faults.truncate(first + 1);
+        if let Some(kept) = faults.get_mut(first) {
+            kept.found = "a list that is not closed before this".to_owned();
+            kept.mend = "end the list above with ]".to_owned();
+        }
+    }
+    faults
 }
 
 fn note_places(path: &str, table: &DeTable<'_>, places: &mut HashMap<String, KeyPlace>) {

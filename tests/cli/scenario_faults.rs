@@ -92,95 +92,15 @@ error: unexpected key or value, expected newline, `#`
   |
   = help: quote texts, write lists in [ ], and name each key once
 
-error: missing comma between array elements, expected `,`
+error: a list that is not closed before this
   --> scenario.toml:20:1
    |
 20 | [realizations]
    | ^ expected TOML: key = value, one a line, under [table] lines
    |
-   = help: quote texts, write lists in [ ], and name each key once
+   = help: end the list above with ]
 
-error: string values must be quoted, expected literal string
-  --> scenario.toml:20:2
-   |
-20 | [realizations]
-   |  ^^^^^^^^^^^^ expected TOML: key = value, one a line, under [table] lines
-   |
-   = help: quote texts, write lists in [ ], and name each key once
-
-error: missing comma between array elements, expected `,`
-  --> scenario.toml:21:1
-   |
-21 | count = 12
-   | ^ expected TOML: key = value, one a line, under [table] lines
-   |
-   = help: quote texts, write lists in [ ], and name each key once
-
-error: string values must be quoted, expected literal string
-  --> scenario.toml:21:1
-   |
-21 | count = 12
-   | ^^^^^ expected TOML: key = value, one a line, under [table] lines
-   |
-   = help: quote texts, write lists in [ ], and name each key once
-
-error: unexpected `=` in array, expected value, `]`
-  --> scenario.toml:21:7
-   |
-21 | count = 12
-   |       ^ expected TOML: key = value, one a line, under [table] lines
-   |
-   = help: quote texts, write lists in [ ], and name each key once
-
-error: missing comma between array elements, expected `,`
-  --> scenario.toml:21:9
-   |
-21 | count = 12
-   |         ^ expected TOML: key = value, one a line, under [table] lines
-   |
-   = help: quote texts, write lists in [ ], and name each key once
-
-error: missing comma between array elements, expected `,`
-  --> scenario.toml:22:1
-   |
-22 | years = 5
-   | ^ expected TOML: key = value, one a line, under [table] lines
-   |
-   = help: quote texts, write lists in [ ], and name each key once
-
-error: string values must be quoted, expected literal string
-  --> scenario.toml:22:1
-   |
-22 | years = 5
-   | ^^^^^ expected TOML: key = value, one a line, under [table] lines
-   |
-   = help: quote texts, write lists in [ ], and name each key once
-
-error: unexpected `=` in array, expected value, `]`
-  --> scenario.toml:22:7
-   |
-22 | years = 5
-   |       ^ expected TOML: key = value, one a line, under [table] lines
-   |
-   = help: quote texts, write lists in [ ], and name each key once
-
-error: missing comma between array elements, expected `,`
-  --> scenario.toml:22:9
-   |
-22 | years = 5
-   |         ^ expected TOML: key = value, one a line, under [table] lines
-   |
-   = help: quote texts, write lists in [ ], and name each key once
-
-error: unclosed array, expected `]`
-  --> scenario.toml:22:10
-   |
-22 | years = 5
-   |          ^ expected TOML: key = value, one a line, under [table] lines
-   |
-   = help: quote texts, write lists in [ ], and name each key once
-
-13 faults; nothing was run
+3 faults; nothing was run
 "#);
 }
 
