@@ -103,6 +103,15 @@ impl SvgBackend {
         self.colour("fill", "fill-opacity", colour);
     }
 
+    /// The inside or the outline, as plotters asks for it.
+    fn paint(&mut self, style: &impl BackendStyle, fill: bool) {
+        if fill {
+            self.fill(style.color());
+        } else {
+            self.stroke(style);
+        }
+    }
+
     fn stroke<S: BackendStyle>(&mut self, style: &S) {
         self.word("fill", "none");
         self.colour("stroke", "stroke-opacity", style.color());
@@ -162,11 +171,7 @@ impl DrawingBackend for SvgBackend {
         self.length("y", upper_left.1);
         self.length("width", (bottom_right.0 - upper_left.0).max(0));
         self.length("height", (bottom_right.1 - upper_left.1).max(0));
-        if fill {
-            self.fill(style.color());
-        } else {
-            self.stroke(style);
-        }
+        self.paint(style, fill);
         self.close();
         Ok(())
     }
@@ -194,11 +199,7 @@ impl DrawingBackend for SvgBackend {
         self.length("cx", center.0);
         self.length("cy", center.1);
         self.length("r", whole(radius));
-        if fill {
-            self.fill(style.color());
-        } else {
-            self.stroke(style);
-        }
+        self.paint(style, fill);
         self.close();
         Ok(())
     }
