@@ -20,6 +20,8 @@ fn interrupted(basin: &Basin, stage: &str, delay_ms: u64) -> Option<i32> {
     assert!(lines.any(|line| line.unwrap().starts_with(stage)), "the study never came to '{stage}'");
     sleep(Duration::from_millis(delay_ms));
     assert!(Command::new("kill").args(["-INT", &child.id().to_string()]).status().unwrap().success());
+    let went_on = |line: &str| line.starts_with("answering") || line.starts_with("writing");
+    assert!(!lines.any(|line| went_on(&line.unwrap())), "the stage that was interrupted ran to its end");
     child.wait().unwrap().code()
 }
 
