@@ -4,7 +4,7 @@
 use crate::cli::basin::weather;
 use thawline::calendar::{MonthDay, WaterYearStart};
 use thawline::snow::{GaugeMultiplier, PhaseRule, correct_catch};
-use thawline::table::Format;
+use thawline::table::{DateColumn, Format};
 use thawline::units::{DepthUnit, TemperatureUnit};
 use thawline::weather::{
     Columns, Gauge, Limits, PrecipitationColumn, Record, TemperatureColumn, TemperatureColumns, Why,
@@ -14,8 +14,7 @@ fn read(text: &str) -> Record {
     let temperature =
         |column: &str| TemperatureColumn { column: column.to_owned(), unit: TemperatureUnit::Celsius };
     let columns = Columns {
-        date: "date".to_owned(),
-        date_format: "%Y-%m-%d".to_owned(),
+        date: DateColumn { columns: vec!["date".to_owned()], format: "%Y-%m-%d".to_owned() },
         temperature: TemperatureColumns::Extremes {
             tmin: temperature("tmin_c"),
             tmax: temperature("tmax_c"),
@@ -24,9 +23,9 @@ fn read(text: &str) -> Record {
             column: "precip_mm".to_owned(),
             unit: DepthUnit::Millimetre,
             gauge: Gauge::Daily,
+            trace: Vec::new(),
         },
         format: Format::default(),
-        missing: vec!["NA".to_owned()],
     };
     let day = |month, day| MonthDay::new(month, day).unwrap();
     let start = WaterYearStart(day(10, 1));

@@ -28,7 +28,8 @@ pub struct Band {
 /// Every fault of the file: missing columns, cells that are no number, an upper edge not above the lower, an area
 /// that is not positive, a mean outside its band, bands that overlap, no bands at all.
 pub fn read_bands(file: &str, text: &str) -> Result<Vec<Band>, Vec<Fault>> {
-    let table = Table::open(file, text, Format::default()).map_err(|fault| vec![fault])?;
+    let format = Format::default();
+    let table = Table::open(file, text, &format).map_err(|fault| vec![fault])?;
     let columns = ["lower_m", "upper_m", "area_km2"].map(|name| table.column(name));
     let mean = if table.has("mean_m") { table.column("mean_m").map(Some) } else { Ok(None) };
     let ([Ok(lower), Ok(upper), Ok(area)], Ok(mean)) = (&columns, &mean) else {

@@ -9,6 +9,7 @@ use crate::perturb::MonthlyChange;
 use crate::report::{Input, Origin};
 use crate::scenario::{DefaultInForce, Document, Draft, Scenario};
 use crate::snow::{LaneSpec, Lanes, correct_catch};
+use crate::table::Encoding;
 use crate::weather::{Record, Series};
 use std::path::Path;
 
@@ -45,7 +46,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             _ => draft.weather.is_some() && draft.season.is_some(),
         };
         if !is_read {
-            faults.extend(read_data(&folder, name, key).err());
+            faults.extend(read_data(&folder, name, key, Encoding::Utf8).err());
         }
     }
     match (draft.complete(), bands, record) {
@@ -76,7 +77,8 @@ fn read_bands_of(
     let Some(basin) = &draft.basin else {
         return Ok(None);
     };
-    let file = read_data(folder, &basin.bands_file, "basin.bands").map_err(|fault| vec![fault])?;
+    let file =
+        read_data(folder, &basin.bands_file, "basin.bands", Encoding::Utf8).map_err(|fault| vec![fault])?;
     let bands = read_bands(&file.name, &file.text)?;
     Ok(Some((bands, file)))
 }
@@ -85,7 +87,8 @@ fn read_record_of(draft: &Draft, folder: &Path) -> Result<Option<(Record, InputF
     let (Some(typed), Some(season)) = (&draft.weather, &draft.season) else {
         return Ok(None);
     };
-    let file = read_data(folder, &typed.file, "weather.file").map_err(|fault| vec![fault])?;
+    let file = read_data(folder, &typed.file, "weather.file", typed.columns.format.encoding)
+        .map_err(|fault| vec![fault])?;
     let start = season.water_year_starts;
     let record = crate::weather::read(
         &file.name,

@@ -2,6 +2,7 @@
 
 use super::failure::Failure;
 use crate::fault::{Fault, Place};
+use crate::table::{Encoding, decode};
 use sha2::{Digest, Sha256};
 use std::fmt::Write;
 use std::fs::File;
@@ -40,34 +41,41 @@ pub(super) fn read_scenario(path: &Path) -> Result<ScenarioFile, Failure> {
     } else {
         File::open(path).and_then(|file| bounded(file, LONGEST_SCENARIO))
     };
-    let text = bytes.map_err(|error| described(&error, LONGEST_SCENARIO)).and_then(decode);
-    let file =
-        text.map(|(text, sha256)| InputFile { name: name.clone(), text, sha256 }).map_err(|found| {
-            let fault = Fault {
-                place: Place::File(name),
-                found,
-                expected: "a scenario: a TOML file in UTF-8".to_owned(),
-                mend: "check the path; `thawline help` shows examples".to_owned(),
-            };
-            Failure::input(&[fault], "", "", false)
-        })?;
+    let refused = |found: String, mend: String| {
+        let expected = "a scenario: a TOML file in UTF-8".to_owned();
+        let fault = Fault { place: Place::File(name.clone()), found, expected, mend };
+        Failure::input(&[fault], "", "", false)
+    };
+    let bytes = bytes.map_err(|error| {
+        let mend = "check the path; `thawline help` shows examples".to_owned();
+        refused(described(&error, LONGEST_SCENARIO), mend)
+    })?;
+    let sha256 = digest(&bytes);
+    let text = decode(bytes, Encoding::Utf8)
+        .map_err(|no| refused(no.found, "save the scenario as plain text in UTF-8".to_owned()))?;
+    let file = InputFile { name: name.clone(), text, sha256 };
     let folder = if is_stdin { PathBuf::new() } else { path.parent().unwrap_or(Path::new("")).to_owned() };
     let stem = if is_stdin { None } else { path.file_stem().map(|stem| stem.to_string_lossy().into_owned()) };
     Ok(ScenarioFile { file, folder, stem })
 }
 
 /// Reads a data file that a scenario names with `key`.
-pub(super) fn read_data(folder: &Path, name: &str, key: &str) -> Result<InputFile, Fault> {
-    let bytes = File::open(folder.join(name)).and_then(|file| bounded(file, LONGEST_DATA));
-    let (text, sha256) =
-        bytes.map_err(|error| described(&error, LONGEST_DATA)).and_then(decode).map_err(|found| {
-            Fault::key(
-                key,
-                format!("{name}: {found}"),
-                "a text file in UTF-8",
-                "the path is relative to the scenario's folder",
-            )
+pub(super) fn read_data(
+    folder: &Path,
+    name: &str,
+    key: &str,
+    encoding: Encoding,
+) -> Result<InputFile, Fault> {
+    let fault = |found: String, expected: &str, mend: String| {
+        Fault::key(key, format!("{name}: {found}"), expected, mend)
+    };
+    let bytes =
+        File::open(folder.join(name)).and_then(|file| bounded(file, LONGEST_DATA)).map_err(|error| {
+            let mend = "the path is relative to the scenario's folder".to_owned();
+            fault(described(&error, LONGEST_DATA), "a file that can be read", mend)
         })?;
+    let sha256 = digest(&bytes);
+    let text = decode(bytes, encoding).map_err(|no| fault(no.found, "a text table", no.mend))?;
     Ok(InputFile { name: name.to_owned(), text, sha256 })
 }
 
@@ -85,18 +93,10 @@ fn described(error: &io::Error, most: u64) -> String {
     }
 }
 
-fn decode(bytes: Vec<u8>) -> Result<(String, String), String> {
+fn digest(bytes: &[u8]) -> String {
     let mut sha256 = String::with_capacity(64);
-    for byte in Sha256::digest(&bytes) {
+    for byte in Sha256::digest(bytes) {
         let _ = write!(sha256, "{byte:02x}");
     }
-    let text = String::from_utf8(bytes).map_err(|error| {
-        let at = error.utf8_error().valid_up_to();
-        let line = error.as_bytes()[..at].iter().filter(|byte| **byte == b'\n').count() + 1;
-        format!("line {line} is not UTF-8")
-    })?;
-    if text.contains('\0') {
-        return Err("it holds NUL bytes, so it is no plain text".to_owned());
-    }
-    Ok((text, sha256))
+    sha256
 }

@@ -2,7 +2,7 @@
 
 use super::{alder_fork, files, frostbell_creek, station};
 use crate::calendar::{MonthDay, WaterYearStart};
-use crate::table::Format;
+use crate::table::{DateColumn, Format};
 use crate::units::{DepthUnit, TemperatureUnit};
 use crate::weather::{
     Columns, Gauge, Limits, PrecipitationColumn, Record, TemperatureColumn, TemperatureColumns, read,
@@ -58,16 +58,15 @@ fn read_station(text: &str) -> Record {
     let celsius =
         |column: &str| TemperatureColumn { column: column.to_owned(), unit: TemperatureUnit::Celsius };
     let columns = Columns {
-        date: "date".to_owned(),
-        date_format: "%Y-%m-%d".to_owned(),
+        date: DateColumn { columns: vec!["date".to_owned()], format: "%Y-%m-%d".to_owned() },
         temperature: TemperatureColumns::Extremes { tmin: celsius("tmin_c"), tmax: celsius("tmax_c") },
         precipitation: PrecipitationColumn {
             column: "precip_mm".to_owned(),
             unit: DepthUnit::Millimetre,
             gauge: Gauge::Daily,
+            trace: Vec::new(),
         },
         format: Format::default(),
-        missing: Vec::new(),
     };
     let day = |month, day| MonthDay::new(month, day).unwrap();
     read("weather.csv", text, &columns, WaterYearStart(day(10, 1)), day(4, 1), Limits::default()).unwrap()

@@ -8,6 +8,7 @@ mod basin;
 mod days;
 mod document;
 mod draw;
+mod format;
 mod nearest;
 mod notes;
 mod realizations;

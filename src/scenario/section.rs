@@ -64,10 +64,15 @@ impl<'d> Section<'d> {
         self.table.is_some_and(|table| table.contains_key(key))
     }
 
-    pub(super) fn value(&mut self, key: &'static str) -> Option<&'d DeValue<'d>> {
+    /// Lets a key be known that is read elsewhere or not at all beside another.
+    pub fn knows(&mut self, key: &'static str) {
         if !self.known.contains(&key) {
             self.known.push(key);
         }
+    }
+
+    pub(super) fn value(&mut self, key: &'static str) -> Option<&'d DeValue<'d>> {
+        self.knows(key);
         self.table?.get(key).map(toml::Spanned::get_ref)
     }
 

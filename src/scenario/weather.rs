@@ -1,14 +1,13 @@
 //! `[weather]`: the station's file and how to read it.
 
+use super::format::{read_date, read_format};
 use super::section::Section;
 use crate::fault::Fault;
 use crate::snow::GaugeMultiplier;
-use crate::table::Format;
 use crate::units::{DepthUnit, TemperatureUnit};
 use crate::weather::{
     Columns, Gauge, Limits, PrecipitationColumn, Reading, TemperatureColumn, TemperatureColumns,
 };
-use chrono::format::{Item, StrftimeItems};
 
 /// The station's file as typed.
 #[derive(Debug, Clone)]
@@ -46,13 +45,6 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
     let precipitation = read_precipitation(section.required_section("precipitation"));
     let gauge_multiplier = read_multiplier(&mut section);
     let format = read_format(&mut section);
-    let missing = section.texts("missing").unwrap_or_else(|| {
-        let marks = ["", "NA", "-9999", "-99.9"];
-        if !section.has("missing") {
-            section.default("missing", format!("{marks:?}"));
-        }
-        marks.map(str::to_owned).to_vec()
-    });
     let default = Limits::default();
     let limits = Limits {
         temperature_gap_days: section.whole_or(
@@ -71,39 +63,25 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
             0.0..=100.0,
             "degC by which a season's mean may differ from the record's median; 6 is the default",
         ),
+        temperature_departure_c: section.number_in(
+            "temperature_departure_c",
+            5.0..=200.0,
+            "degC from the median of the time of year beyond which a temperature is taken as missing; 25 is common",
+        ),
     };
     section.finish();
-    let (date, date_format) = date?;
     Some(WeatherTyped {
         file: file?,
         station_elevation_m: station_elevation_m?,
         columns: Columns {
-            date,
-            date_format,
+            date: date?,
             temperature: temperature?,
             precipitation: precipitation?,
             format: format?,
-            missing,
         },
         gauge_multiplier: gauge_multiplier?,
         limits,
     })
-}
-
-fn read_date(mut section: Section<'_>) -> Option<(String, String)> {
-    let column = section.text_or("column", "date");
-    let format = section.text_or("format", "%Y-%m-%d");
-    let is_sound = StrftimeItems::new(&format).all(|item| !matches!(item, Item::Error));
-    if !is_sound {
-        section.fault(Fault::key(
-            section.path_of("format"),
-            format!("{format:?}"),
-            "a date format in the signs of strftime",
-            "for example \"%Y-%m-%d\" or \"%m/%d/%Y\"",
-        ));
-    }
-    section.finish();
-    is_sound.then_some((column, format))
 }
 
 fn read_temperatures(section: &mut Section<'_>) -> Option<TemperatureColumns> {
@@ -159,8 +137,7 @@ fn read_precipitation(mut section: Section<'_>) -> Option<PrecipitationColumn> {
         Some(false)
     };
     let gauge = if is_accumulating == Some(true) {
-        let readings = [("start-of-day", Reading::StartOfDay), ("end-of-day", Reading::EndOfDay)];
-        let reading = section.choice("reading", &readings);
+        let reading = section.choice("reading", &Reading::NAMES);
         if reading.is_none() && !section.has("reading") {
             section.required_text(
                 "reading",
@@ -178,8 +155,9 @@ fn read_precipitation(mut section: Section<'_>) -> Option<PrecipitationColumn> {
     } else {
         is_accumulating.map(|_| Gauge::Daily)
     };
+    let trace = section.texts("trace").unwrap_or_default();
     section.finish();
-    Some(PrecipitationColumn { column: column?, unit: unit?, gauge: gauge? })
+    Some(PrecipitationColumn { column: column?, unit: unit?, gauge: gauge?, trace })
 }
 
 fn read_multiplier(section: &mut Section<'_>) -> Option<GaugeMultiplier> {
@@ -200,24 +178,4 @@ fn read_multiplier(section: &mut Section<'_>) -> Option<GaugeMultiplier> {
             None
         }
     }
-}
-
-fn read_format(section: &mut Section<'_>) -> Option<Format> {
-    let one_byte = |section: &Section<'_>, key: &str, text: &str| match text.as_bytes() {
-        [byte] if byte.is_ascii() => Some(*byte),
-        _ => {
-            section.fault(Fault::key(
-                section.path_of(key),
-                format!("{text:?}"),
-                "one plain character",
-                "for example \",\" or \";\" or \"\\t\"",
-            ));
-            None
-        }
-    };
-    let separator = section.text_or("separator", ",");
-    let comment = section.text_or("comment", "#");
-    let separator = one_byte(section, "separator", &separator)?;
-    let comment = if comment.is_empty() { None } else { Some(one_byte(section, "comment", &comment)?) };
-    Some(Format { separator, comment })
 }

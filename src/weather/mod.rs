@@ -1,15 +1,19 @@
 //! The weather record: from the cells of a station's file to whole, screened water years of daily weather.
 //!
-//! `columns` reads cells, `gauge` turns an accumulating gauge's readings into daily amounts, `gaps` fills short
+//! `columns` says which column holds what, `days` reads the cells, `sift` takes out what cannot be weather, `gauge` turns an accumulating gauge's readings into daily amounts, `gaps` fills short
 //! temperature gaps, `years` decides which water years can be used, `record` ties them together, and `series` is what
 //! the engine and the generators read.
 
 mod columns;
+mod days;
 mod gaps;
 mod gauge;
 mod plausible;
 mod record;
 mod series;
+mod sift;
+mod suspicious;
+mod time_of_year;
 mod years;
 
 pub use columns::{Columns, Gauge, PrecipitationColumn, Reading, TemperatureColumn, TemperatureColumns};
@@ -17,4 +21,5 @@ pub use gauge::GaugeCount;
 pub use plausible::Means;
 pub use record::{Counts, Record, read};
 pub use series::{Series, YearSpan, YearView};
+pub use suspicious::{FirstPlace, Suspicion};
 pub use years::{Limits, SkippedYear, Why};

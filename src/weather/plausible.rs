@@ -76,19 +76,7 @@ impl Record {
                 format!("{} is the coldest month: is the sign of the latitude right?", MONTHS[coldest]),
             );
         }
-        if self.counts.impossible_cells > 0 {
-            let cells = self.counts.impossible_cells;
-            say(
-                "weather.file",
-                format!(
-                    "{cells} cells beyond -90 to 60 degC, 2000 mm in a day or 30 000 mm in a gauge: taken as missing"
-                ),
-            );
-        }
-        if self.counts.crossed_temperature_days > 0 {
-            let days = self.counts.crossed_temperature_days;
-            say("weather.tmin", format!("above tmax on {days} days; both are taken as missing there"));
-        }
+        found.extend(self.suspicions.iter().map(|it| Unlikely::new(it.about, it.to_string())));
         found
     }
 }

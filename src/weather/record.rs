@@ -1,9 +1,12 @@
 //! The station's record: read, made daily, filled and screened.
 
-use super::columns::{Columns, Gauge, TemperatureColumns, read_days};
+use super::columns::{Columns, Gauge, TemperatureColumns};
+use super::days::read_days;
 use super::gaps;
 use super::gauge::{GaugeCount, daily_amounts};
 use super::series::Series;
+use super::sift::{sift, sift_amounts};
+use super::suspicious::Suspicion;
 use super::years::{Limits, Screening, SkippedYear};
 use crate::calendar::{MonthDay, WaterYearStart, date_of};
 use crate::fault::Fault;
@@ -23,6 +26,8 @@ pub struct Counts {
     pub absent_days: usize,
     /// Cells beyond what any station has measured; they are taken as missing.
     pub impossible_cells: usize,
+    /// Temperatures too far from the median of their time of year; taken as missing where that was asked for.
+    pub far_temperature_cells: usize,
     /// Days without a full pair of temperatures.
     pub temperature_missing_days: usize,
     /// Days on which the minimum stood above the maximum; both are taken as missing.
@@ -46,6 +51,8 @@ pub struct Record {
     pub skipped: Vec<SkippedYear>,
     /// Counts.
     pub counts: Counts,
+    /// Values that are hardly weather.
+    pub suspicions: Vec<Suspicion>,
     /// Whether the record has daily minima and maxima.
     pub has_daily_range: bool,
 }
@@ -65,9 +72,9 @@ pub fn read(
     limits: Limits,
 ) -> Result<Record, Vec<Fault>> {
     let mut days = read_days(file, text, columns)?;
-    let crossed = uncross(&mut days.tmin_c, &mut days.tmax_c);
+    let sifted = sift(&mut days, columns, &limits);
     let (amounts, gauge) = match columns.precipitation.gauge {
-        Gauge::Daily => (days.gauge_mm, None),
+        Gauge::Daily => (days.gauge_mm.clone(), None),
         Gauge::Accumulating { reading, reset_tolerance_mm } => {
             let is_first_day = |day: usize| {
                 let date = date_of(days.first, day + 1);
@@ -77,6 +84,8 @@ pub fn read(
             (amounts, Some(count))
         }
     };
+    let mut suspicions = sifted.suspicions;
+    suspicions.extend(sift_amounts(&days, &amounts));
     let no_temperature: Vec<bool> =
         days.tmin_c.iter().zip(&days.tmax_c).map(|(tmin, tmax)| tmin.is_none() || tmax.is_none()).collect();
     let is_missing: Vec<bool> =
@@ -103,10 +112,11 @@ pub fn read(
         first: days.first,
         last: date_of(days.first, mean_c.len()),
         days: mean_c.len(),
-        absent_days: days.absent_days,
-        impossible_cells: days.impossible_cells,
+        absent_days: days.line.iter().filter(|line| **line == 0).count(),
+        impossible_cells: sifted.impossible_cells,
+        far_temperature_cells: sifted.far_cells,
         temperature_missing_days: no_temperature.iter().filter(|missing| **missing).count(),
-        crossed_temperature_days: crossed,
+        crossed_temperature_days: sifted.crossed_days,
         interpolated_days: 0,
         precipitation_missing_days: amounts.iter().filter(|amount| amount.is_none()).count(),
         dry_for_want_of_data_days: 0,
@@ -124,21 +134,7 @@ pub fn read(
         last_year = Some(year.water_year);
     }
     let has_daily_range = matches!(columns.temperature, TemperatureColumns::Extremes { .. });
-    Ok(Record { series, skipped, counts, has_daily_range })
-}
-
-/// A minimum above the maximum cannot be: takes both as missing and counts the days.
-fn uncross(tmin_c: &mut [Option<f64>], tmax_c: &mut [Option<f64>]) -> usize {
-    let mut crossed = 0;
-    for (tmin, tmax) in tmin_c.iter_mut().zip(tmax_c) {
-        if let (Some(low), Some(high)) = (*tmin, *tmax)
-            && low > high
-        {
-            (*tmin, *tmax) = (None, None);
-            crossed += 1;
-        }
-    }
-    crossed
+    Ok(Record { series, skipped, counts, suspicions, has_daily_range })
 }
 
 fn nothing_usable(file: &str, skipped: &[SkippedYear]) -> Fault {

@@ -15,11 +15,18 @@ pub struct Limits {
     pub missing_days_allowed: usize,
     /// A season's mean may differ this much from the record's median, degC.
     pub season_mean_departure_c: f64,
+    /// A temperature farther from the median of its time of year is taken as missing, degC; none keeps them all.
+    pub temperature_departure_c: Option<f64>,
 }
 
 impl Default for Limits {
     fn default() -> Self {
-        Self { temperature_gap_days: 5, missing_days_allowed: 15, season_mean_departure_c: 6.0 }
+        Self {
+            temperature_gap_days: 5,
+            missing_days_allowed: 15,
+            season_mean_departure_c: 6.0,
+            temperature_departure_c: None,
+        }
     }
 }
 

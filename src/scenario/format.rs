@@ -1,0 +1,113 @@
+//! How a data file is written: separator, decimal sign, remarks, letters, marks for 'not measured', dates.
+
+use super::section::Section;
+use crate::fault::Fault;
+use crate::table::{DateColumn, Decimal, Encoding, Format, USUAL_MISSING};
+use chrono::format::{Item, StrftimeItems};
+
+/// A header farther down than this is none.
+const FARTHEST_HEADER: u64 = 10_000;
+
+/// Reads how the file that `section` names is written. The defaults that are noted are those of [`Format::default`].
+pub(super) fn read_format(section: &mut Section<'_>) -> Option<Format> {
+    let separator = section.text_or("separator", ",");
+    let decimal = named(section, "decimal", &Decimal::NAMES, ".");
+    let comment = section.text_or("comment", "#");
+    let encoding = named(section, "encoding", &Encoding::NAMES, "utf-8");
+    let header_line =
+        section.has("header_line").then(|| section.whole_or("header_line", 1, 1..=FARTHEST_HEADER) as usize);
+    section.knows("header_line");
+    let missing = section.texts("missing").unwrap_or_else(|| {
+        if !section.has("missing") {
+            section.default("missing", format!("{USUAL_MISSING:?}"));
+        }
+        USUAL_MISSING.map(str::to_owned).to_vec()
+    });
+    let separator = one_byte(section, "separator", &separator);
+    let comment =
+        if comment.is_empty() { Some(None) } else { one_byte(section, "comment", &comment).map(Some) };
+    Some(Format {
+        separator: separator?,
+        decimal: decimal?,
+        comment: comment?,
+        encoding: encoding?,
+        header_line,
+        missing,
+    })
+}
+
+/// One of several words, or the default, which is one of them.
+fn named<T: Copy>(
+    section: &mut Section<'_>,
+    key: &'static str,
+    choices: &[(&'static str, T)],
+    default: &str,
+) -> Option<T> {
+    if section.has(key) {
+        return section.choice(key, choices);
+    }
+    section.text_or(key, default);
+    choices.iter().find(|(word, _)| *word == default).map(|(_, choice)| *choice)
+}
+
+fn one_byte(section: &Section<'_>, key: &str, text: &str) -> Option<u8> {
+    match text.as_bytes() {
+        [byte] if byte.is_ascii() && !matches!(byte, b'"' | b'\n' | b'\r') => Some(*byte),
+        _ => {
+            section.fault(Fault::key(
+                section.path_of(key),
+                format!("{text:?}"),
+                "one plain character",
+                "for example \",\" or \";\" or \"\\t\"",
+            ));
+            None
+        }
+    }
+}
+
+/// Reads `date = { column, format }`, or `columns` where the parts of a date stand in several.
+pub(super) fn read_date(mut section: Section<'_>) -> Option<DateColumn> {
+    let columns = if section.has("columns") {
+        let columns = section.texts("columns");
+        if section.has("column") {
+            section.fault(Fault::key(
+                section.path_of("column"),
+                "column beside columns",
+                "one of the two",
+                "name one column, or in columns all that make up the date",
+            ));
+        }
+        section.knows("column");
+        if columns.as_ref().is_some_and(Vec::is_empty) {
+            let mend = "for example columns = [\"year\", \"month\", \"day\"] with format = \"%Y %m %d\"";
+            section.fault(Fault::key(
+                section.path_of("columns"),
+                "an empty list",
+                "at least one column",
+                mend,
+            ));
+            None
+        } else {
+            columns
+        }
+    } else {
+        section.knows("columns");
+        Some(vec![section.text_or("column", "date")])
+    };
+    let default = match columns.as_ref().map_or(1, Vec::len) {
+        1 => "%Y-%m-%d",
+        _ => "%Y %m %d",
+    };
+    let format = section.text_or("format", default);
+    let is_sound = StrftimeItems::new(&format).all(|item| !matches!(item, Item::Error));
+    if !is_sound {
+        section.fault(Fault::key(
+            section.path_of("format"),
+            format!("{format:?}"),
+            "a date format in the signs of strftime",
+            "for example \"%Y-%m-%d\" or \"%m/%d/%Y\"",
+        ));
+    }
+    section.finish();
+    is_sound.then_some(DateColumn { columns: columns?, format })
+}

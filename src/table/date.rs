@@ -1,0 +1,112 @@
+//! Dates of a table's rows: in one column or in several, in a stated form; and a way out where they do not read.
+
+use super::{Row, Table, Tally};
+use crate::fault::Fault;
+use chrono::NaiveDate;
+use chrono::format::ParseErrorKind;
+use serde::Serialize;
+
+/// Forms of dates that are tried where the stated one does not fit, to suggest one that does.
+const USUAL_FORMS: [&str; 10] = [
+    "%Y-%m-%d",
+    "%m/%d/%Y",
+    "%d/%m/%Y",
+    "%d.%m.%Y",
+    "%d-%m-%Y",
+    "%Y/%m/%d",
+    "%Y%m%d",
+    "%Y-%m-%d %H:%M",
+    "%Y-%m-%dT%H:%M:%S",
+    "%d-%b-%Y",
+];
+
+/// Which columns hold a row's date, and how it is written.
+#[derive(Debug, Clone, PartialEq, Eq, Serialize)]
+pub struct DateColumn {
+    /// The columns' names; the cells of several are joined by a blank.
+    pub columns: Vec<String>,
+    /// The date's form, in the signs of `strftime`.
+    pub format: String,
+}
+
+/// Reads the dates of a table.
+pub struct DateReader<'c> {
+    form: &'c str,
+    at: Vec<usize>,
+    read_well: usize,
+    failed: usize,
+    /// How many of the failed ones each usual form reads.
+    fitting: [usize; USUAL_FORMS.len()],
+}
+
+impl<'c> DateReader<'c> {
+    /// Finds the date's columns.
+    ///
+    /// # Errors
+    /// Those that are not there.
+    pub fn new(table: &Table<'_>, date: &'c DateColumn) -> Result<Self, Vec<Fault>> {
+        let found: Vec<Result<usize, Fault>> = date.columns.iter().map(|name| table.column(name)).collect();
+        let at: Vec<usize> = found.iter().filter_map(|at| at.as_ref().ok()).copied().collect();
+        if at.len() < found.len() {
+            return Err(found.into_iter().filter_map(Result::err).collect());
+        }
+        Ok(Self { form: &date.format, at, read_well: 0, failed: 0, fitting: [0; USUAL_FORMS.len()] })
+    }
+
+    /// The date's columns; never empty.
+    pub fn columns(&self) -> &[usize] {
+        &self.at
+    }
+
+    /// A row's date, or a fault in the tally.
+    pub fn read(&mut self, table: &Table<'_>, row: &Row<'_>, tally: &mut Tally) -> Option<NaiveDate> {
+        let text = match self.at.as_slice() {
+            [one] => row.cell(*one).to_owned(),
+            several => several.iter().map(|at| row.cell(*at)).collect::<Vec<_>>().join(" "),
+        };
+        let error = match NaiveDate::parse_from_str(&text, self.form) {
+            Ok(date) => {
+                self.read_well += 1;
+                return Some(date);
+            }
+            Err(error) => error,
+        };
+        let expected = format!("a date written as {}", self.form);
+        let mut fault = self.fault(table, row, &expected, "");
+        if matches!(error.kind(), ParseErrorKind::OutOfRange | ParseErrorKind::Impossible) {
+            fault.expected = "a day that the calendar has".to_owned();
+            fault.mend = "mend the date, or take the line out".to_owned();
+        } else {
+            self.failed += 1;
+            for (count, form) in self.fitting.iter_mut().zip(USUAL_FORMS) {
+                *count += usize::from(NaiveDate::parse_from_str(&text, form).is_ok());
+            }
+        }
+        tally.push(fault);
+        None
+    }
+
+    /// A fault of a row's date.
+    pub fn fault(&self, table: &Table<'_>, row: &Row<'_>, expected: &str, mend: &str) -> Fault {
+        table.cell_fault(row, self.at[0], expected, mend)
+    }
+
+    /// Says how to mend the dates that did not read, once all of them have been seen.
+    pub fn finish(&self, table: &Table<'_>, tally: &mut Tally) {
+        let fits = self
+            .fitting
+            .iter()
+            .zip(USUAL_FORMS)
+            .filter(|(count, _)| self.failed > 0 && **count == self.failed);
+        let fitting: Vec<String> = fits.map(|(_, form)| format!("{form:?}")).collect();
+        let mend = if self.read_well > 0 {
+            let others = self.read_well;
+            format!("the file mixes forms of dates: write it as the {others} that read well are written")
+        } else if fitting.is_empty() {
+            "state the file's own form in date = { column, format }, in the signs of strftime".to_owned()
+        } else {
+            format!("if the file writes dates so, state format = {} in date", fitting.join(" or "))
+        };
+        tally.mend(table.header.get(self.at[0]).unwrap_or(""), &mend);
+    }
+}

@@ -1,0 +1,193 @@
+//! What cannot be weather is taken as missing; what hardly can is said. Limits without a source are common practice.
+
+use super::columns::{Columns, Gauge};
+use super::days::RawDays;
+use super::suspicious::{Finder, Suspicion, said};
+use super::time_of_year::medians_by_time_of_year;
+use super::years::Limits;
+use crate::calendar::date_of;
+use chrono::Datelike;
+use std::ops::RangeInclusive;
+
+/// No station has measured beyond these (records: -89.2 and 56.7 degC, World Meteorological Organization), degC.
+const POSSIBLE_C: RangeInclusive<f64> = -90.0..=60.0;
+/// Nor more in a day (record: 1825 mm, World Meteorological Organization), mm.
+const MOST_IN_A_DAY_MM: f64 = 2000.0;
+/// Nor more in a year (record: 26 470 mm in twelve months), mm.
+const MOST_IN_A_GAUGE_MM: f64 = 30_000.0;
+/// Hardly a mountain station has been colder or hotter, degC.
+const USUAL_C: RangeInclusive<f64> = -55.0..=45.0;
+/// Hardly a mountain station has caught more in a day, mm.
+const MUCH_IN_A_DAY_MM: f64 = 500.0;
+/// Hardly a day has a wider range, degC.
+const WIDE_RANGE_C: f64 = 40.0;
+/// A value farther from the median of its time of year is most likely a failing sensor's, degC.
+const FAR_FROM_MEDIAN_C: f64 = 25.0;
+/// So many equal temperatures on end are most likely a stuck sensor's, days.
+const STUCK_DAYS: usize = 10;
+
+/// What became of the cells.
+pub(super) struct Sifted {
+    /// Cells beyond what any station has measured.
+    pub impossible_cells: usize,
+    /// Days with a minimum above the maximum.
+    pub crossed_days: usize,
+    /// Cells farther from the median of their time of year than the limits allow.
+    pub far_cells: usize,
+    pub suspicions: Vec<Suspicion>,
+}
+
+/// Takes as missing: values beyond any station's record; both temperatures of a day whose minimum lies above its maximum;
+/// where the limits ask for it, temperatures far from the median of their time of year. The rest stays and is said.
+pub(super) fn sift(days: &mut RawDays, columns: &Columns, limits: &Limits) -> Sifted {
+    let mut finder = Finder { first_day: days.first, line: days.line.clone(), found: Vec::new() };
+    let keys: &[&str] = match columns.temperature.named().len() {
+        1 => &["weather.tmean"],
+        _ => &["weather.tmin", "weather.tmax"],
+    };
+    let mut impossible_cells = 0;
+    for (key, column) in keys.iter().zip([&mut days.tmin_c, &mut days.tmax_c]) {
+        let what = "values beyond -90 to 60 degC, which no station has measured";
+        impossible_cells += finder.drop(key, what, column, "degC", |_, value| !POSSIBLE_C.contains(&value));
+    }
+    let (most_mm, what) = match columns.precipitation.gauge {
+        Gauge::Daily => (MOST_IN_A_DAY_MM, "amounts above 2000 mm in a day, which no station has measured"),
+        Gauge::Accumulating { .. } => {
+            (MOST_IN_A_GAUGE_MM, "readings above 30 000 mm, which no gauge has gathered")
+        }
+    };
+    impossible_cells +=
+        finder.drop("weather.precipitation", what, &mut days.gauge_mm, "mm", |_, value| value > most_mm);
+    let crossed_days = if keys.len() == 2 { uncross(&mut finder, days) } else { 0 };
+    let mut far_cells = 0;
+    for (key, column) in keys.iter().zip([&mut days.tmin_c, &mut days.tmax_c]) {
+        far_cells += far_from_median(&mut finder, key, column, limits.temperature_departure_c);
+        unusual(&mut finder, key, column);
+    }
+    if let [_, tmax] = keys {
+        let range = |day: usize| days.tmax_c[day].zip(days.tmin_c[day]).map(|(high, low)| high - low);
+        finder.note(tmax, format!("daily ranges above {WIDE_RANGE_C} degC"), "", |day| {
+            range(day).filter(|range| *range > WIDE_RANGE_C).map(|range| said(range, "degC"))
+        });
+    } else {
+        days.tmax_c.clone_from(&days.tmin_c);
+    }
+    no_leap_days(&mut finder, days);
+    Sifted { impossible_cells, crossed_days, far_cells, suspicions: finder.found }
+}
+
+/// Daily amounts that are hardly precipitation. `line` holds the line of each day, 0 where it has none.
+pub(super) fn sift_amounts(days: &RawDays, amounts: &[Option<f64>]) -> Vec<Suspicion> {
+    const KEY: &str = "weather.precipitation";
+    let mut finder = Finder { first_day: days.first, line: days.line.clone(), found: Vec::new() };
+    finder.note(KEY, format!("amounts above {MUCH_IN_A_DAY_MM} mm in a day"), "", |day| {
+        amounts[day].filter(|amount| *amount > MUCH_IN_A_DAY_MM).map(|amount| said(amount, "mm"))
+    });
+    if amounts.iter().flatten().all(|amount| *amount == 0.0) && amounts.iter().any(Option::is_some) {
+        let mend = "Is it the right column?";
+        finder.note(KEY, "days with an amount, all of them 0", mend, |day| {
+            amounts[day].map(|amount| said(amount, "mm"))
+        });
+    }
+    finder.found
+}
+
+/// A minimum above the maximum cannot be: takes both as missing and counts the days.
+fn uncross(finder: &mut Finder, days: &mut RawDays) -> usize {
+    let RawDays { tmin_c, tmax_c, .. } = days;
+    let crossed: Vec<Option<(f64, f64)>> = tmin_c
+        .iter()
+        .zip(tmax_c.iter())
+        .map(|(low, high)| low.zip(*high).filter(|(low, high)| low > high))
+        .collect();
+    let known = finder.found.len();
+    finder.note("weather.tmin", "days with a minimum above the maximum, both", "", |day| {
+        crossed[day].map(|(low, high)| format!("{} above {}", said(low, "degC"), said(high, "degC")))
+    });
+    for (day, crossed) in crossed.iter().enumerate() {
+        if crossed.is_some() {
+            (tmin_c[day], tmax_c[day]) = (None, None);
+        }
+    }
+    finder.found.get_mut(known).map_or(0, |new| {
+        new.is_taken_as_missing = true;
+        new.count
+    })
+}
+
+/// Temperatures far from the median of their time of year: taken as missing beyond a stated limit, else said.
+fn far_from_median(
+    finder: &mut Finder,
+    key: &'static str,
+    column: &mut [Option<f64>],
+    limit_c: Option<f64>,
+) -> usize {
+    let Some(medians) = medians_by_time_of_year(finder.first_day, column) else { return 0 };
+    let first = finder.first_day;
+    let departure = |day: usize, value: f64| {
+        let time_of_year = date_of(first, day + 1).ordinal0() as usize;
+        (value - medians[time_of_year]).abs()
+    };
+    let what =
+        |limit_c: f64| format!("values more than {limit_c} degC from the median of their time of year");
+    if let Some(limit_c) = limit_c {
+        return finder.drop(key, what(limit_c), column, "degC", |day, value| departure(day, value) > limit_c);
+    }
+    let mend = format!(
+        "A failing sensor? temperature_departure_c = {FAR_FROM_MEDIAN_C} in [weather] takes them as missing"
+    );
+    finder.note(key, what(FAR_FROM_MEDIAN_C), mend, |day| {
+        column[day]
+            .filter(|value| departure(day, *value) > FAR_FROM_MEDIAN_C)
+            .map(|value| said(value, "degC"))
+    });
+    0
+}
+
+/// Extremes, a column that never changes, and runs of equal values.
+fn unusual(finder: &mut Finder, key: &'static str, column: &[Option<f64>]) {
+    let (low, high) = (USUAL_C.start(), USUAL_C.end());
+    finder.note(key, format!("values beyond {low} to {high} degC"), "", |day| {
+        column[day].filter(|value| !USUAL_C.contains(value)).map(|value| said(value, "degC"))
+    });
+    let mut measured = column.iter().flatten();
+    let first = measured.next();
+    if first.is_some() && column.len() > STUCK_DAYS && measured.all(|value| Some(value) == first) {
+        finder.note(key, "values, all of them the same", "Is it the right column?", |day| {
+            column[day].map(|value| said(value, "degC"))
+        });
+        return;
+    }
+    let stuck = in_long_runs(column);
+    let what = format!("values in runs of {STUCK_DAYS} or more days on which it did not change");
+    finder.note(key, what, "A stuck sensor?", |day| {
+        column[day].filter(|_| stuck[day]).map(|value| said(value, "degC"))
+    });
+}
+
+/// Whether each day lies in a run of equal values of [`STUCK_DAYS`] or more.
+fn in_long_runs(column: &[Option<f64>]) -> Vec<bool> {
+    let mut stuck = Vec::with_capacity(column.len());
+    for run in column.chunk_by(|a, b| a.is_some() && a == b) {
+        stuck.resize(stuck.len() + run.len(), run.len() >= STUCK_DAYS);
+    }
+    stuck
+}
+
+/// A record of years of 365 days lacks every 29 February; said, since each costs a missing day.
+fn no_leap_days(finder: &mut Finder, days: &RawDays) {
+    let leap_days: Vec<bool> = days
+        .first
+        .iter_days()
+        .take(days.line.len())
+        .map(|date| date.month() == 2 && date.day() == 29)
+        .collect();
+    let has_line = leap_days.iter().zip(&days.line).any(|(is_leap_day, line)| *is_leap_day && *line > 0);
+    if !has_line {
+        let mend =
+            "Years of 365 days? Temperatures are interpolated there, and precipitation counts as missing";
+        finder.note("weather.date", "times 29 February, which has no line in any leap year", mend, |day| {
+            leap_days[day].then(String::new)
+        });
+    }
+}

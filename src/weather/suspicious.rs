@@ -1,0 +1,113 @@
+//! Values that are hardly weather: how many there are, where the first stands, and what may be done about them.
+
+use crate::calendar::date_of;
+use chrono::NaiveDate;
+use serde::Serialize;
+use std::fmt;
+
+/// A kind of value that is hardly weather: how many there are, and where the first stands.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct Suspicion {
+    /// The scenario key of the column.
+    pub about: &'static str,
+    /// What is suspicious.
+    pub what: String,
+    /// How many values or days.
+    pub count: usize,
+    /// Whether they were taken as missing.
+    pub is_taken_as_missing: bool,
+    /// The first.
+    pub first: FirstPlace,
+    /// What may be done about it; empty where nothing need be.
+    pub mend: String,
+}
+
+/// Where the first of many values stands.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct FirstPlace {
+    /// Its day.
+    pub date: NaiveDate,
+    /// Its line in the file; none where the day has no line.
+    pub line: Option<usize>,
+    /// The value, with its unit.
+    pub value: String,
+}
+
+impl fmt::Display for Suspicion {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        write!(f, "{} {}", self.count, self.what)?;
+        if self.is_taken_as_missing {
+            f.write_str(", taken as missing")?;
+        }
+        write!(f, "; the first on {}", self.first.date)?;
+        if let Some(line) = self.first.line {
+            write!(f, " (line {line})")?;
+        }
+        if !self.first.value.is_empty() {
+            write!(f, ": {}", self.first.value)?;
+        }
+        if !self.mend.is_empty() {
+            write!(f, ". {}", self.mend)?;
+        }
+        Ok(())
+    }
+}
+
+/// Collects what is suspicious about one record.
+pub(super) struct Finder {
+    pub first_day: NaiveDate,
+    /// Line of the file that each day stands on; 0 where it has none.
+    pub line: Vec<usize>,
+    pub found: Vec<Suspicion>,
+}
+
+impl Finder {
+    /// Notes the days for which `value` gives the value in words, if there are any.
+    pub fn note(
+        &mut self,
+        about: &'static str,
+        what: impl Into<String>,
+        mend: impl Into<String>,
+        value: impl Fn(usize) -> Option<String>,
+    ) {
+        let mut days = (0..self.line.len()).filter_map(|day| value(day).map(|value| (day, value)));
+        if let Some((first, value)) = days.next() {
+            let line = self.line.get(first).copied().filter(|line| *line > 0);
+            self.found.push(Suspicion {
+                about,
+                what: what.into(),
+                count: 1 + days.count(),
+                is_taken_as_missing: false,
+                first: FirstPlace { date: date_of(self.first_day, first + 1), line, value },
+                mend: mend.into(),
+            });
+        }
+    }
+
+    /// Notes the values of a column for which `is` holds and takes them as missing; gives their number.
+    pub fn drop(
+        &mut self,
+        about: &'static str,
+        what: impl Into<String>,
+        column: &mut [Option<f64>],
+        unit: &str,
+        is: impl Fn(usize, f64) -> bool,
+    ) -> usize {
+        let known = self.found.len();
+        self.note(about, what, "", |day| {
+            column[day].filter(|value| is(day, *value)).map(|value| said(value, unit))
+        });
+        for (day, value) in column.iter_mut().enumerate() {
+            *value = value.filter(|value| !is(day, *value));
+        }
+        self.found.get_mut(known).map_or(0, |new| {
+            new.is_taken_as_missing = true;
+            new.count
+        })
+    }
+}
+
+/// A value with its unit.
+pub(super) fn said(value: f64, unit: &str) -> String {
+    format!("{:.1} {unit}", value + 0.0)
+}
