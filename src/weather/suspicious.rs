@@ -10,7 +10,7 @@ use std::fmt;
 pub struct Suspicion {
     /// The scenario key of the column.
     pub about: &'static str,
-    /// What is suspicious.
+    /// What is suspicious, from its noun in the plural on.
     pub what: String,
     /// How many values or days.
     pub count: usize,
@@ -35,7 +35,10 @@ pub struct FirstPlace {
 
 impl fmt::Display for Suspicion {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
-        write!(f, "{} {}", self.count, self.what)?;
+        match self.what.split_once(' ') {
+            Some((many, rest)) if self.count == 1 => write!(f, "1 {} {rest}", many.trim_end_matches('s'))?,
+            _ => write!(f, "{} {}", self.count, self.what)?,
+        }
         if self.is_taken_as_missing {
             f.write_str(", taken as missing")?;
         }
@@ -109,5 +112,5 @@ impl Finder {
 
 /// A value with its unit.
 pub(super) fn said(value: f64, unit: &str) -> String {
-    format!("{:.1} {unit}", value + 0.0)
+    if value.abs() < 1e6 { format!("{:.1} {unit}", value + 0.0) } else { format!("{value:e} {unit}") }
 }

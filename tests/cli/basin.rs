@@ -98,7 +98,8 @@ pub fn weather(years: i64) -> String {
         let angle = 2.0 * std::f64::consts::PI * (day as f64 - 105.0) / 365.25;
         let mean = 3.0 - 11.0 * libm::cos(angle);
         let wet = if day % 4 == 0 { 6.0 + 3.0 * (day / 365) as f64 } else { 0.0 };
-        writeln!(text, "{date},{:.1},{:.1},{wet:.1}", mean - 5.0, mean + 5.0).unwrap();
+        let half_range = 5.0 + 0.1 * (day % 2) as f64;
+        writeln!(text, "{date},{:.1},{:.1},{wet:.1}", mean - half_range, mean + half_range).unwrap();
     }
     text
 }

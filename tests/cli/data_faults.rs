@@ -35,18 +35,18 @@ error: area_km2: 'NaN'
 error: precip_mm: 'trace'
  --> weather.csv:3:21
   |
-3 | 2000-10-02,0.4,10.4,trace
+3 | 2000-10-02,0.3,10.5,trace
   |                     ^^^^^ expected a number or a mark for 'not measured'
   |
-  = help: if it is such a mark, add it to 'missing' in [weather]
+  = help: if it is such a mark, add it to 'missing' where the scenario names the file
 
 error: date: '2000-10-02'
  --> weather.csv:4:1
   |
 4 | 2000-10-02,0.2,10.2,0.0
-  | ^^^^^^^^^^ expected a date after that of the line above, within 400 years of the first
+  | ^^^^^^^^^^ expected a date that line 3 does not have already
   |
-  = help: sort the lines by date and keep one line a day
+  = help: keep one line a day; of hourly values make daily ones first
 
 error: date: '24.12.2000'
   --> weather.csv:86:1
@@ -54,7 +54,7 @@ error: date: '24.12.2000'
 86 | 24.12.2000,-12.3,-2.3,6.0
    | ^^^^^^^^^^ expected a date written as %Y-%m-%d
    |
-   = help: if the file writes dates so, state format = "%d.%m.%Y" in date
+   = help: the file mixes forms of dates: write it as the 1094 that read well are written
 
 error: precip_mm: '-9.0'
    --> weather.csv:370:21
@@ -188,7 +188,15 @@ fn impossible_values_are_missing_and_said() {
     basin.write("weather.csv", &broken);
     let ended = basin.run("study scenario.toml");
     assert_eq!(ended.status, 0, "{}", ended.stderr);
-    assert!(ended.stderr.contains("3 cells beyond"), "{}", ended.stderr);
+    for (column, value) in [("tmin", "-999.0 degC"), ("tmax", "999.0 degC"), ("precipitation", "1e300 mm")] {
+        let said =
+            ended.stderr.lines().find(|line| line.starts_with(&format!("unlikely: weather.{column}: 1 ")));
+        assert!(
+            said.is_some_and(|line| line.contains("taken as missing") && line.ends_with(value)),
+            "{}",
+            ended.stderr
+        );
+    }
     let daily = basin.run("daily scenario.toml");
     assert_eq!(daily.stdout.lines().count(), plain.stdout.lines().count());
     assert_ne!(daily.stdout, plain.stdout);

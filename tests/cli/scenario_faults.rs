@@ -43,7 +43,7 @@ error: weather.file: wether.csv: there is no such file
   --> scenario.toml:11:8
    |
 11 | file = "wether.csv"
-   |        ^^^^^^^^^^^^ expected a text file in UTF-8
+   |        ^^^^^^^^^^^^ expected a file that can be read
    |
    = help: the path is relative to the scenario's folder
 
