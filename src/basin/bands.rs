@@ -1,11 +1,13 @@
 //! Elevation bands: the area-elevation table, read, checked and sorted.
 
+use super::columns::{Column, both};
 use crate::fault::Fault;
-use crate::table::{Format, Table, Tally};
+use crate::table::{Format, Row, Table, Tally};
+use crate::units::{AreaUnit, LengthUnit};
 use serde::Serialize;
 
 /// A table of more bands is a table of something else.
-const MOST_BANDS: usize = 1000;
+pub(super) const MOST_BANDS: usize = 1000;
 
 /// One elevation band.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
@@ -20,26 +22,62 @@ pub struct Band {
     pub elevation_m: f64,
 }
 
-/// Reads an area-elevation table with the columns `lower_m`, `upper_m`, `area_km2` and, where wanted, `mean_m`.
+/// How a table of bands is to be read.
+#[derive(Debug, Clone, PartialEq)]
+pub struct BandColumns {
+    /// Lower edges.
+    pub lower: Column<LengthUnit>,
+    /// Upper edges.
+    pub upper: Column<LengthUnit>,
+    /// Areas.
+    pub area: Column<AreaUnit>,
+    /// Mean elevations, which may be left out.
+    pub mean: Column<LengthUnit>,
+    /// How the table is written.
+    pub format: Format,
+}
+
+impl Default for BandColumns {
+    /// `lower_m`, `upper_m`, `area_km2` and, where it stands there, `mean_m`; or the same in other units.
+    fn default() -> Self {
+        Self {
+            lower: Column::WithUnit("lower"),
+            upper: Column::WithUnit("upper"),
+            area: Column::WithUnit("area"),
+            mean: Column::WithUnit("mean"),
+            format: Format::default(),
+        }
+    }
+}
+
+/// Reads an area-elevation table.
 ///
 /// Rows may come in any order; the bands are returned from the lowest up.
 ///
 /// # Errors
 /// Every fault of the file: missing columns, cells that are no number, an upper edge not above the lower, an area
 /// that is not positive, a mean outside its band, bands that overlap, no bands at all.
-pub fn read_bands(file: &str, text: &str) -> Result<Vec<Band>, Vec<Fault>> {
-    let format = Format::default();
-    let table = Table::open(file, text, &format).map_err(|fault| vec![fault])?;
-    let columns = ["lower_m", "upper_m", "area_km2"].map(|name| table.column(name));
-    let mean = if table.has("mean_m") { table.column("mean_m").map(Some) } else { Ok(None) };
-    let ([Ok(lower), Ok(upper), Ok(area)], Ok(mean)) = (&columns, &mean) else {
-        return Err(columns.into_iter().filter_map(Result::err).chain(mean.err()).collect());
+pub fn read_bands(file: &str, text: &str, columns: &BandColumns) -> Result<Vec<Band>, Vec<Fault>> {
+    let table = Table::open(file, text, &columns.format).map_err(|fault| vec![fault])?;
+    let lengths = &LengthUnit::NAMES;
+    let edges = both(columns.lower.find(&table, lengths), columns.upper.find(&table, lengths));
+    let area = columns.area.find(&table, &AreaUnit::NAMES).map_err(|fault| vec![fault]);
+    let mean = if columns.mean.is_there(&table, lengths) {
+        columns.mean.find(&table, lengths).map(Some).map_err(|fault| vec![fault])
+    } else {
+        Ok(None)
+    };
+    let ([lower, upper], area, mean) = match (edges, area, mean) {
+        (Ok(edges), Ok(area), Ok(mean)) => (edges, area, mean),
+        (edges, area, mean) => {
+            return Err([edges.err(), area.err(), mean.err()].into_iter().flatten().flatten().collect());
+        }
     };
 
     let mut tally = Tally::default();
-    let mut bands = Vec::new();
-    for (number, row) in table.rows().enumerate() {
-        if number == MOST_BANDS {
+    let mut bands: Vec<(Row<'_>, Band)> = Vec::new();
+    for row in table.rows() {
+        if bands.len() == MOST_BANDS {
             tally.push(table.file_fault(
                 format!("more than {MOST_BANDS} bands"),
                 "bands some 50 to 300 m high",
@@ -48,57 +86,38 @@ pub fn read_bands(file: &str, text: &str) -> Result<Vec<Band>, Vec<Fault>> {
             break;
         }
         let Some(row) = tally.keep(row) else { continue };
-        let mut number = |column: usize| {
-            let value = row.cell(column).parse::<f64>().ok().filter(|value| value.is_finite());
-            if value.is_none() {
-                tally.push(table.cell_fault(&row, column, "a number", "write it with a decimal point"));
-            }
-            value
-        };
-        let (Some(lower_m), Some(upper_m), Some(area_km2)) = (number(*lower), number(*upper), number(*area))
-        else {
-            continue;
-        };
-        let stated_m = match mean {
-            Some(column) => match number(*column) {
-                Some(value) => Some((*column, value)),
-                None => continue,
-            },
-            None => None,
-        };
+        let lower_m = tally.keep(table.required_number(&row, lower.0)).map(|value| lower.1.to_metres(value));
+        let upper_m = tally.keep(table.required_number(&row, upper.0)).map(|value| upper.1.to_metres(value));
+        let area_km2 =
+            tally.keep(table.required_number(&row, area.0)).map(|value| area.1.to_square_kilometres(value));
+        let mean_m = mean
+            .map(|(at, unit)| tally.keep(table.required_number(&row, at)).map(|value| unit.to_metres(value)));
+        let (Some(lower_m), Some(upper_m), Some(area_km2)) = (lower_m, upper_m, area_km2) else { continue };
+        let middle_m = (lower_m + upper_m) / 2.0;
+        let band = Band { lower_m, upper_m, area_km2, elevation_m: mean_m.flatten().unwrap_or(middle_m) };
+        let mut complain =
+            |at: usize, expected: &str, mend: &str| tally.push(table.cell_fault(&row, at, expected, mend));
         if lower_m >= upper_m {
-            tally.push(table.cell_fault(
-                &row,
-                *upper,
-                "an upper edge above the lower",
-                "check the two edges",
-            ));
+            complain(upper.0, "an upper edge above the lower", "check the two edges");
         }
         if area_km2 <= 0.0 {
-            tally.push(table.cell_fault(&row, *area, "an area above 0 km2", "leave out bands without area"));
+            complain(area.0, "an area above 0", "leave out bands without area");
         }
-        if let Some((column, mean_m)) = stated_m
-            && !(lower_m..=upper_m).contains(&mean_m)
+        if let Some((at, _)) = mean
+            && !(lower_m.min(band.elevation_m)..=upper_m.max(lower_m)).contains(&band.elevation_m)
         {
-            tally.push(table.cell_fault(
-                &row,
-                column,
-                "a mean within the band",
-                "check it against the edges",
-            ));
+            complain(at, "a mean within the band", "check it against the edges");
         }
-        let elevation_m = stated_m.map_or((lower_m + upper_m) / 2.0, |(_, mean_m)| mean_m);
-        bands.push((row.line, Band { lower_m, upper_m, area_km2, elevation_m }));
+        bands.push((row, band));
     }
     bands.sort_by(|(_, a), (_, b)| a.lower_m.total_cmp(&b.lower_m));
     for pair in bands.windows(2) {
-        let ((line, below), (above_line, above)) = (&pair[0], &pair[1]);
+        let ((row_below, below), (row, above)) = (&pair[0], &pair[1]);
         if below.upper_m > above.lower_m {
-            tally.push(table.file_fault(
-                format!("the bands of lines {line} and {above_line} overlap"),
-                "bands that meet or leave a hole",
-                "let each band start where the one below ends",
-            ));
+            let expected =
+                format!("a lower edge not below the upper edge of the band on line {}", row_below.line);
+            let mend = "let each band start where the one below ends";
+            tally.push(table.cell_fault(row, lower.0, &expected, mend));
         }
     }
     if bands.is_empty() && tally.is_empty() {

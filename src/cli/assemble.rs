@@ -2,14 +2,13 @@
 
 use super::arguments::Shared;
 use super::failure::Failure;
-use super::input::{InputFile, ScenarioFile, read_data, read_scenario};
-use crate::basin::{Basin, read_bands};
+use super::input::{InputFile, ScenarioFile, missing_file, read_data, read_scenario};
+use crate::basin::Basin;
 use crate::fault::{Fault, Unlikely};
 use crate::perturb::MonthlyChange;
 use crate::report::{Input, Origin};
 use crate::scenario::{DefaultInForce, Document, Draft, Scenario};
 use crate::snow::{LaneSpec, Lanes, correct_catch};
-use crate::table::Encoding;
 use crate::weather::{Record, Series};
 use std::path::Path;
 
@@ -42,11 +41,11 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
     let record = take(read_record_of(&draft, &folder), &mut faults).flatten();
     for (key, name) in &draft.named_files {
         let is_read = match *key {
-            "basin.bands" => draft.basin.is_some(),
+            key if key.starts_with("basin.") => draft.basin.is_some(),
             _ => draft.weather.is_some() && draft.season.is_some(),
         };
         if !is_read {
-            faults.extend(read_data(&folder, name, key, Encoding::Utf8).err());
+            faults.extend(missing_file(&folder, name, key));
         }
     }
     match (draft.complete(), bands, record) {
@@ -77,9 +76,9 @@ fn read_bands_of(
     let Some(basin) = &draft.basin else {
         return Ok(None);
     };
-    let file =
-        read_data(folder, &basin.bands_file, "basin.bands", Encoding::Utf8).map_err(|fault| vec![fault])?;
-    let bands = read_bands(&file.name, &file.text)?;
+    let typed = &basin.hypsometry;
+    let file = read_data(folder, &typed.file, typed.key, typed.encoding()).map_err(|fault| vec![fault])?;
+    let bands = typed.bands(&file.name, &file.text)?;
     Ok(Some((bands, file)))
 }
 

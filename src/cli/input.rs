@@ -66,17 +66,28 @@ pub(super) fn read_data(
     key: &str,
     encoding: Encoding,
 ) -> Result<InputFile, Fault> {
-    let fault = |found: String, expected: &str, mend: String| {
-        Fault::key(key, format!("{name}: {found}"), expected, mend)
-    };
-    let bytes =
-        File::open(folder.join(name)).and_then(|file| bounded(file, LONGEST_DATA)).map_err(|error| {
-            let mend = "the path is relative to the scenario's folder".to_owned();
-            fault(described(&error, LONGEST_DATA), "a file that can be read", mend)
-        })?;
+    let bytes = File::open(folder.join(name))
+        .and_then(|file| bounded(file, LONGEST_DATA))
+        .map_err(|error| unopened(&error, name, key))?;
     let sha256 = digest(&bytes);
-    let text = decode(bytes, encoding).map_err(|no| fault(no.found, "a text table", no.mend))?;
+    let text = decode(bytes, encoding)
+        .map_err(|no| Fault::key(key, format!("{name}: {}", no.found), "a text table", no.mend))?;
     Ok(InputFile { name: name.to_owned(), text, sha256 })
+}
+
+/// What keeps a data file from being opened, where its content is not wanted yet.
+pub(super) fn missing_file(folder: &Path, name: &str, key: &str) -> Option<Fault> {
+    let error = File::open(folder.join(name)).err()?;
+    Some(unopened(&error, name, key))
+}
+
+fn unopened(error: &io::Error, name: &str, key: &str) -> Fault {
+    Fault::key(
+        key,
+        format!("{name}: {}", described(error, LONGEST_DATA)),
+        "a file that can be read",
+        "the path is relative to the scenario's folder",
+    )
 }
 
 fn bounded(file: impl Read, most: u64) -> io::Result<Vec<u8>> {

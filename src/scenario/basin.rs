@@ -1,16 +1,17 @@
 //! `[basin]`: where the basin lies and how weather changes with its elevation.
 
+use super::hypsometry::{HypsometryTyped, read_hypsometry};
 use super::section::Section;
 use crate::basin::{PrecipitationGradient, TemperatureGradient};
 use crate::fault::Fault;
 
-/// The basin as typed: its bands stand in a file of their own.
+/// The basin as typed: its hypsometry stands in a file of its own.
 #[derive(Debug, Clone)]
 pub struct BasinTyped {
     /// Latitude, degrees, positive north.
     pub latitude_deg: f64,
-    /// The area-elevation table, relative to the scenario.
-    pub bands_file: String,
+    /// The file of its bands, or of the curve to cut them from.
+    pub hypsometry: HypsometryTyped,
     /// Temperature gradient.
     pub temperature: TemperatureGradient,
     /// Precipitation gradient.
@@ -23,12 +24,7 @@ const USUAL_C_PER_KM: std::ops::RangeInclusive<f64> = -8.0..=-2.0;
 pub(super) fn read(mut section: Section<'_>) -> Option<BasinTyped> {
     let latitude_deg =
         section.required_number("latitude_deg", -90.0..=90.0, "degrees, negative in the southern hemisphere");
-    let bands_file = section.required_text(
-        "bands",
-        "the path of a CSV file with lower_m, upper_m, area_km2",
-        "add bands = \"bands.csv\"",
-    );
-    section.names_file("basin.bands", bands_file.as_deref());
+    let hypsometry = read_hypsometry(&mut section);
     let both = gradient(&mut section, "temperature_gradient_c_per_km");
     let tmin = gradient(&mut section, "tmin_temperature_gradient_c_per_km").or(both);
     let tmax = gradient(&mut section, "tmax_temperature_gradient_c_per_km").or(both);
@@ -52,7 +48,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<BasinTyped> {
     section.finish();
     Some(BasinTyped {
         latitude_deg: latitude_deg?,
-        bands_file: bands_file?,
+        hypsometry: hypsometry?,
         temperature: TemperatureGradient { tmin_c_per_km: tmin?, tmax_c_per_km: tmax? },
         precipitation: PrecipitationGradient::new(pct_per_100m?, top_m),
     })

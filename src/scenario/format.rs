@@ -8,8 +8,20 @@ use chrono::format::{Item, StrftimeItems};
 /// A header farther down than this is none.
 const FARTHEST_HEADER: u64 = 10_000;
 
-/// Reads how the file that `section` names is written. The defaults that are noted are those of [`Format::default`].
+/// Reads how the file that `section` names is written, marks for 'not measured' included.
 pub(super) fn read_format(section: &mut Section<'_>) -> Option<Format> {
+    let layout = read_layout(section);
+    let missing = section.texts("missing").unwrap_or_else(|| {
+        if !section.has("missing") {
+            section.default("missing", format!("{USUAL_MISSING:?}"));
+        }
+        USUAL_MISSING.map(str::to_owned).to_vec()
+    });
+    Some(Format { missing, ..layout? })
+}
+
+/// The same of a file in which every cell must be filled.
+pub(super) fn read_layout(section: &mut Section<'_>) -> Option<Format> {
     let separator = section.text_or("separator", ",");
     let decimal = named(section, "decimal", &Decimal::NAMES, ".");
     let comment = section.text_or("comment", "#");
@@ -17,12 +29,6 @@ pub(super) fn read_format(section: &mut Section<'_>) -> Option<Format> {
     let header_line =
         section.has("header_line").then(|| section.whole_or("header_line", 1, 1..=FARTHEST_HEADER) as usize);
     section.knows("header_line");
-    let missing = section.texts("missing").unwrap_or_else(|| {
-        if !section.has("missing") {
-            section.default("missing", format!("{USUAL_MISSING:?}"));
-        }
-        USUAL_MISSING.map(str::to_owned).to_vec()
-    });
     let separator = one_byte(section, "separator", &separator);
     let comment =
         if comment.is_empty() { Some(None) } else { one_byte(section, "comment", &comment).map(Some) };
@@ -32,7 +38,7 @@ pub(super) fn read_format(section: &mut Section<'_>) -> Option<Format> {
         comment: comment?,
         encoding: encoding?,
         header_line,
-        missing,
+        missing: Vec::new(),
     })
 }
 

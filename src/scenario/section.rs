@@ -59,6 +59,12 @@ impl<'d> Section<'d> {
         self.notes.named_files.borrow_mut().extend(file.map(|file| (key, file.to_owned())));
     }
 
+    /// Whether the key was typed and holds a table.
+    pub fn is_table(&self, key: &str) -> bool {
+        let value = self.table.and_then(|table| table.get(key)).map(toml::Spanned::get_ref);
+        matches!(value, Some(DeValue::Table(_)))
+    }
+
     /// Whether the key was typed.
     pub fn has(&self, key: &str) -> bool {
         self.table.is_some_and(|table| table.contains_key(key))
@@ -299,6 +305,22 @@ impl<'d> Section<'d> {
             None => "take one of these".to_owned(),
         };
         self.fault(Fault::key(self.path_of(key), format!("{typed:?}"), words.join(" or "), mend));
+        None
+    }
+
+    /// One of several words that must be there.
+    pub fn required_choice<T: Copy>(
+        &mut self,
+        key: &'static str,
+        choices: &[(&'static str, T)],
+    ) -> Option<T> {
+        if self.has(key) {
+            return self.choice(key, choices);
+        }
+        self.knows(key);
+        let words: Vec<String> = choices.iter().map(|(word, _)| format!("{word:?}")).collect();
+        let mend = format!("add {key} = {}", words.first().map_or("", String::as_str));
+        self.missing(key, &words.join(" or "), &mend);
         None
     }
 

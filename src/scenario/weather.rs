@@ -116,20 +116,14 @@ fn read_temperatures(section: &mut Section<'_>) -> Option<TemperatureColumns> {
 
 fn read_temperature(mut section: Section<'_>) -> Option<TemperatureColumn> {
     let column = section.required_text("column", "the column's name in the header", "add column = \"...\"");
-    let unit = section.choice("unit", &TemperatureUnit::NAMES);
-    if unit.is_none() && !section.has("unit") {
-        section.required_text("unit", "\"degC\", \"degF\" or \"K\"", "add unit = \"degC\"");
-    }
+    let unit = section.required_choice("unit", &TemperatureUnit::NAMES);
     section.finish();
     Some(TemperatureColumn { column: column?, unit: unit? })
 }
 
 fn read_precipitation(mut section: Section<'_>) -> Option<PrecipitationColumn> {
     let column = section.required_text("column", "the column's name in the header", "add column = \"...\"");
-    let unit = section.choice("unit", &DepthUnit::NAMES);
-    if unit.is_none() && !section.has("unit") {
-        section.required_text("unit", "\"mm\", \"cm\" or \"in\"", "add unit = \"mm\"");
-    }
+    let unit = section.required_choice("unit", &DepthUnit::NAMES);
     let is_accumulating = if section.has("gauge") {
         section.choice("gauge", &[("daily", false), ("accumulating", true)])
     } else {

@@ -47,7 +47,7 @@ impl Basin {
     pub fn new() -> Self {
         let basin = Self { folder: TempDir::new().unwrap() };
         basin.write("scenario.toml", SCENARIO);
-        basin.write("bands.csv", "lower_m,upper_m,area_km2\n1800,2200,40\n2200,2800,25\n");
+        basin.write("bands.csv", "lower_m,upper_m,area_km2\n1900,2200,40\n2200,2500,25\n");
         basin.write("weather.csv", &weather(3));
         basin
     }

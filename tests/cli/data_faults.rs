@@ -30,7 +30,7 @@ error: area_km2: 'NaN'
 3 | 2200,2800,NaN
   |           ^^^ expected a number
   |
-  = help: write it with a decimal point
+  = help: if it is such a mark, add it to 'missing' where the scenario names the file
 
 error: precip_mm: 'trace'
  --> weather.csv:3:21

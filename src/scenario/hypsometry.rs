@@ -1,0 +1,129 @@
+//! `basin.bands` or `basin.area_elevation_curve`: the basin's area by elevation, and how its file is to be read.
+
+use super::format::read_layout;
+use super::section::Section;
+use crate::basin::{Band, BandColumns, Column, CurveColumns, read_bands, read_curve};
+use crate::fault::Fault;
+use crate::table::Encoding;
+use crate::units::{AreaUnit, LengthUnit};
+
+/// A file of bands or of a curve.
+#[derive(Debug, Clone)]
+pub struct HypsometryTyped {
+    /// The file, relative to the scenario.
+    pub file: String,
+    /// The key that names it.
+    pub key: &'static str,
+    form: Form,
+}
+
+#[derive(Debug, Clone)]
+enum Form {
+    Bands(BandColumns),
+    Curve(CurveColumns),
+}
+
+impl HypsometryTyped {
+    /// Letters of the file.
+    pub fn encoding(&self) -> Encoding {
+        match &self.form {
+            Form::Bands(columns) => columns.format.encoding,
+            Form::Curve(columns) => columns.format.encoding,
+        }
+    }
+
+    /// The bands that the file's text holds.
+    ///
+    /// # Errors
+    /// Every fault of the file, which is called `file` in them.
+    pub fn bands(&self, file: &str, text: &str) -> Result<Vec<Band>, Vec<Fault>> {
+        match &self.form {
+            Form::Bands(columns) => read_bands(file, text, columns),
+            Form::Curve(columns) => read_curve(file, text, columns),
+        }
+    }
+}
+
+const EXPECTED: &str =
+    "the path of a CSV file with lower_m, upper_m, area_km2 (or lower_ft, upper_ft, area_mi2)";
+
+pub(super) fn read_hypsometry(section: &mut Section<'_>) -> Option<HypsometryTyped> {
+    let has_curve = section.has("area_elevation_curve");
+    if has_curve && section.has("bands") {
+        section.fault(Fault::key(
+            section.path_of("area_elevation_curve"),
+            "area_elevation_curve beside bands",
+            "one of the two",
+            "take one of them out",
+        ));
+    }
+    if has_curve {
+        section.knows("bands");
+        return read_curve_table(section.section("area_elevation_curve"));
+    }
+    section.knows("area_elevation_curve");
+    if section.is_table("bands") {
+        return read_bands_table(section.section("bands"));
+    }
+    let file = section.required_text(
+        "bands",
+        EXPECTED,
+        "add bands = \"bands.csv\", or area_elevation_curve = { ... }",
+    );
+    let key = "basin.bands";
+    section.names_file(key, file.as_deref());
+    Some(HypsometryTyped { file: file?, key, form: Form::Bands(BandColumns::default()) })
+}
+
+fn read_bands_table(mut section: Section<'_>) -> Option<HypsometryTyped> {
+    let key = "basin.bands.file";
+    let file = section.required_text("file", "the path of a CSV file", "add file = \"bands.csv\"");
+    section.names_file(key, file.as_deref());
+    let lower = column(&mut section, "lower", &LengthUnit::NAMES);
+    let upper = column(&mut section, "upper", &LengthUnit::NAMES);
+    let area = column(&mut section, "area", &AreaUnit::NAMES);
+    let mean = column(&mut section, "mean", &LengthUnit::NAMES);
+    let format = read_layout(&mut section);
+    section.finish();
+    let columns = BandColumns { lower: lower?, upper: upper?, area: area?, mean: mean?, format: format? };
+    Some(HypsometryTyped { file: file?, key, form: Form::Bands(columns) })
+}
+
+fn read_curve_table(mut section: Section<'_>) -> Option<HypsometryTyped> {
+    let key = "basin.area_elevation_curve.file";
+    let file = section.required_text("file", "the path of a CSV file", "add file = \"curve.csv\"");
+    section.names_file(key, file.as_deref());
+    let band_thickness_m = section.required_number(
+        "band_thickness_m",
+        1.0..=2000.0,
+        "add it: the height of the bands to cut, in metres; 100 is usual",
+    );
+    let elevation = column(&mut section, "elevation", &LengthUnit::NAMES);
+    let area_below = column(&mut section, "area_below", &AreaUnit::NAMES);
+    let format = read_layout(&mut section);
+    section.finish();
+    let columns = CurveColumns {
+        elevation: elevation?,
+        area_below: area_below?,
+        band_thickness_m: band_thickness_m?,
+        format: format?,
+    };
+    Some(HypsometryTyped { file: file?, key, form: Form::Curve(columns) })
+}
+
+/// `{ column, unit }`, or where that is not typed a column called by the key and its unit.
+fn column<U: Copy>(
+    section: &mut Section<'_>,
+    key: &'static str,
+    units: &[(&'static str, U)],
+) -> Option<Column<U>> {
+    if !section.has(key) {
+        section.knows(key);
+        return Some(Column::WithUnit(key));
+    }
+    let mut inner = section.section(key);
+    let column = inner.required_text("column", "the column's name in the header", "add column = \"...\"");
+    let unit = inner.required_choice("unit", units);
+    inner.finish();
+    Some(Column::Stated { column: column?, unit: unit? })
+}
