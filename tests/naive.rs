@@ -13,6 +13,8 @@ pub enum Phase {
     Linear { snow_c: f64, rain_c: f64 },
     /// Snow at and below the threshold, degC.
     Step { threshold_c: f64 },
+    /// The smooth curve for land.
+    Tanh,
 }
 
 /// Degrees from the day's mean, or from a sine between minimum and maximum.
@@ -45,8 +47,10 @@ pub struct Band {
     pub tmin_shape: [f64; 12],
     /// Monthly shape of the warming of maxima.
     pub tmax_shape: [f64; 12],
-    /// Change of precipitation, percent per degC, compounded.
-    pub precipitation_change_pct_per_c: f64,
+    /// Change of precipitation by month, percent per degC, compounded.
+    pub precipitation_change_pct_per_c: [f64; 12],
+    /// Change of precipitation by month as stated for this level, percent; in place of that per degC.
+    pub precipitation_change_pct: Option<[f64; 12]>,
     /// Rain or snow.
     pub phase: Phase,
     /// Degree rule.
@@ -102,11 +106,14 @@ pub fn temperature(station_c: f64, shape: f64, gradient_c_per_km: f64, band: &Ba
 }
 
 /// Sections 3 and 4: the station's precipitation at the level, carried to the band.
-pub fn precipitation(station_mm: f64, band: &Band) -> f64 {
-    let mut changed = station_mm;
-    if band.precipitation_change_pct_per_c != 0.0 {
-        changed *= libm::pow(1.0 + band.precipitation_change_pct_per_c / 100.0, band.level_c);
-    }
+pub fn precipitation(station_mm: f64, month: usize, band: &Band) -> f64 {
+    let changed = match band.precipitation_change_pct {
+        Some(stated_pct) => station_mm * (1.0 + stated_pct[month - 1] / 100.0),
+        None => {
+            let pct_per_c = band.precipitation_change_pct_per_c[month - 1];
+            station_mm * libm::pow(1.0 + pct_per_c / 100.0, band.level_c)
+        }
+    };
     let mut elevation_m = band.elevation_m;
     if elevation_m > band.precipitation_top_m {
         elevation_m = band.precipitation_top_m;
@@ -131,6 +138,7 @@ pub fn snow_fraction(phase: Phase, mean_c: f64) -> f64 {
                 (rain_c - mean_c) / (rain_c - snow_c)
             }
         }
+        Phase::Tanh => (1.0 - libm::tanh(0.7 * (mean_c - 1.2))) / 2.0,
         Phase::Step { threshold_c } => {
             if mean_c <= threshold_c {
                 1.0
@@ -179,7 +187,7 @@ pub fn day(band: &Band, factor: f64, ice_mm: f64, liquid_mm: f64, day: Day) -> D
     let tmin_c = temperature(day.tmin_c, band.tmin_shape[month], band.tmin_gradient_c_per_km[month], band);
     let tmax_c = temperature(day.tmax_c, band.tmax_shape[month], band.tmax_gradient_c_per_km[month], band);
     let mean_c = (tmin_c + tmax_c) / 2.0;
-    let fallen_mm = precipitation(day.precipitation_mm, band);
+    let fallen_mm = precipitation(day.precipitation_mm, day.month, band);
     let snow_mm = snow_fraction(band.phase, mean_c) * fallen_mm;
     let rain_mm = fallen_mm - snow_mm;
 

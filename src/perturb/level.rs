@@ -1,5 +1,6 @@
 //! Warming levels: an offset and a factor for each month (method, section 3).
 
+use super::global::GlobalWarming;
 use serde::Serialize;
 
 /// How warming is spread over months and what precipitation does with it; the same for every level of a study.
@@ -9,8 +10,29 @@ pub struct Warming {
     pub tmin_monthly_shape: [f64; 12],
     /// The same for daily maxima.
     pub tmax_monthly_shape: [f64; 12],
-    /// Change of precipitation, percent per degC, compounded.
-    pub precipitation_change_pct_per_c: f64,
+    /// What precipitation does.
+    pub precipitation: PrecipitationChange,
+    /// Where the levels were stated as global warming: how they became the basin's.
+    pub global: Option<GlobalWarming>,
+}
+
+/// How precipitation changes with the level, January first.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+#[serde(rename_all = "snake_case")]
+pub enum PrecipitationChange {
+    /// Percent per degC of the level, compounded.
+    PctPerC([f64; 12]),
+    /// Percent as stated for each level; none at levels that are not listed.
+    PctByLevel(Vec<StatedChange>),
+}
+
+/// The change of precipitation that was stated for a level.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct StatedChange {
+    /// The level, degC.
+    pub level_c: f64,
+    /// Percent, January first.
+    pub pct: [f64; 12],
 }
 
 impl Default for Warming {
@@ -19,7 +41,21 @@ impl Default for Warming {
         Self {
             tmin_monthly_shape: [1.0; 12],
             tmax_monthly_shape: [1.0; 12],
-            precipitation_change_pct_per_c: 0.0,
+            precipitation: PrecipitationChange::PctPerC([0.0; 12]),
+            global: None,
+        }
+    }
+}
+
+impl PrecipitationChange {
+    /// Factor on precipitation at a level, month by month: `(1 + p/100)^w`, or `1 + c/100` as stated; never below 0.
+    pub fn factor(&self, level_c: f64) -> [f64; 12] {
+        match self {
+            Self::PctPerC(pct) => pct.map(|pct| libm::pow(1.0 + pct / 100.0, level_c)),
+            Self::PctByLevel(stated) => stated
+                .iter()
+                .find(|stated| stated.level_c == level_c)
+                .map_or([1.0; 12], |stated| stated.pct.map(|pct| (1.0 + pct / 100.0).max(0.0))),
         }
     }
 }
@@ -41,14 +77,13 @@ impl MonthlyChange {
 }
 
 impl Warming {
-    /// The change at a level of `level_c` degC of any sign: `w*m(month)` on temperatures and
-    /// `(1 + p/100)^w` on precipitation.
+    /// The change at a level of `level_c` degC of any sign: `w*m(month)` on temperatures, the stated factor on
+    /// precipitation.
     pub fn at(&self, level_c: f64) -> MonthlyChange {
-        let factor = libm::pow(1.0 + self.precipitation_change_pct_per_c / 100.0, level_c);
         MonthlyChange {
             tmin_c: self.tmin_monthly_shape.map(|shape| level_c * shape),
             tmax_c: self.tmax_monthly_shape.map(|shape| level_c * shape),
-            precipitation_factor: [factor; 12],
+            precipitation_factor: self.precipitation.factor(level_c),
         }
     }
 

@@ -1,11 +1,13 @@
 //! Perturbation: warming levels as monthly offsets and factors, and generators of weather that could have been.
 
+mod global;
 mod level;
 mod mean_change;
 mod stream;
 mod year_blocks;
 
-pub use level::{MonthlyChange, Warming};
+pub use global::GlobalWarming;
+pub use level::{MonthlyChange, PrecipitationChange, StatedChange, Warming};
 pub use mean_change::mean_change_factor;
 pub use stream::{resampling_stream, stream};
 pub use year_blocks::YearBlocks;

@@ -3,6 +3,7 @@
 use super::document::Document;
 use super::nearest::nearest;
 use super::notes::{DefaultInForce, Notes};
+use super::precipitation_change::Nested;
 use crate::fault::{Fault, Place, Unlikely};
 use std::ops::RangeInclusive;
 use toml::de::{DeTable, DeValue};
@@ -222,6 +223,27 @@ impl<'d> Section<'d> {
             }
         }
         (numbers.len() == array.len()).then_some(numbers)
+    }
+
+    /// A number, a list of numbers or a list of lists of numbers, if one was typed.
+    pub fn nested_numbers(&mut self, key: &'static str) -> Option<Nested> {
+        const EXPECTED: &str = "a number, a list of numbers, or a list of lists of numbers";
+        let value = self.value(key)?;
+        let list = |value: &DeValue<'_>| match value {
+            DeValue::Array(array) => array.iter().map(|element| finite(element.get_ref())).collect(),
+            _ => None,
+        };
+        let nested = match value {
+            DeValue::Array(array) if array.iter().any(|element| element.get_ref().is_array()) => {
+                array.iter().map(|element| list(element.get_ref())).collect::<Option<_>>().map(Nested::Lists)
+            }
+            DeValue::Array(_) => list(value).map(Nested::List),
+            other => finite(other).map(Nested::One),
+        };
+        if nested.is_none() {
+            self.wrong_type(key, value, EXPECTED);
+        }
+        nested
     }
 
     /// Twelve numbers, January first, if they were typed; with `or_one`, one number for all months will do.

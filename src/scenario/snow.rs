@@ -7,6 +7,7 @@ use crate::snow::{DegreeRule, PhaseRule, RawSnow, SnowParams};
 enum PhaseWord {
     Linear,
     Step,
+    Tanh,
 }
 
 pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern: bool) -> Option<SnowParams> {
@@ -42,7 +43,10 @@ pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern:
 }
 
 fn read_phase(mut section: Section<'_>) -> Option<PhaseRule> {
-    let rule = section.choice("rule", &[("linear", PhaseWord::Linear), ("step", PhaseWord::Step)]);
+    let rule = section.choice(
+        "rule",
+        &[("linear", PhaseWord::Linear), ("step", PhaseWord::Step), ("tanh", PhaseWord::Tanh)],
+    );
     let (PhaseRule::Linear { snow_only_below_c, rain_only_above_c }, PhaseRule::Step { half_snow_at_c }) =
         (PhaseRule::LINEAR, PhaseRule::STEP)
     else {
@@ -63,12 +67,13 @@ fn read_phase(mut section: Section<'_>) -> Option<PhaseRule> {
         Some(PhaseWord::Step) => Some(PhaseRule::Step {
             half_snow_at_c: section.number_or("half_snow_at_c", half_snow_at_c, anything, mend),
         }),
+        Some(PhaseWord::Tanh) => Some(PhaseRule::Tanh),
         None => {
             let has_numbers = ["snow_only_below_c", "rain_only_above_c", "half_snow_at_c"]
                 .into_iter()
                 .any(|key| section.has(key));
             if has_numbers && !section.has("rule") {
-                section.required_text("rule", "\"linear\" or \"step\"", "add rule = \"linear\"");
+                section.required_text("rule", "\"linear\", \"step\" or \"tanh\"", "add rule = \"linear\"");
             }
             return None;
         }
@@ -89,6 +94,7 @@ fn note_defaults(section: &Section<'_>, raw: &RawSnow, snow: &SnowParams) {
         PhaseRule::Step { half_snow_at_c } => {
             format!("{{ rule = \"step\", half_snow_at_c = {half_snow_at_c} }}")
         }
+        PhaseRule::Tanh => "{ rule = \"tanh\" }".to_owned(),
     };
     let factor = "degree_day_factor_mm_per_c_day";
     let defaults = [

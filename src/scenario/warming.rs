@@ -1,5 +1,7 @@
 //! `[warming]`: the levels, and how warming is spread over the year.
 
+use super::levels::{Levels, read_levels};
+use super::precipitation_change::read_precipitation_change;
 use super::section::Section;
 use crate::fault::Fault;
 use crate::perturb::Warming;
@@ -15,19 +17,8 @@ pub struct WarmingTyped {
     pub warming: Warming,
 }
 
-/// A study of more levels than this is a mistyped list.
-const MOST_LEVELS: usize = 40;
-
 pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
-    let levels = section.numbers("levels_c");
-    let levels_c = match levels {
-        Some(levels) => check_levels(&section, levels),
-        None if section.has("levels_c") => None,
-        None => {
-            section.default("levels_c", "[0, 1, 2, 3, 4]");
-            Some(vec![0.0, 1.0, 2.0, 3.0, 4.0])
-        }
-    };
+    let levels = read_levels(&mut section);
     let reference_c =
         section.number_or("reference_c", 0.0, -10.0..=15.0, "the level all others are compared with");
     let both = shape(&mut section, "monthly_shape");
@@ -37,14 +28,10 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
         section.default("monthly_shape", "[1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 1]");
     }
     let both = both.unwrap_or([1.0; 12]);
-    let precipitation_change_pct_per_c = section.number_or(
-        "precipitation_change_pct_per_c",
-        0.0,
-        -50.0..=50.0,
-        "percent per degC; the air can hold about 7 more, the global mean rises by 2 to 3",
-    );
+    let typed_c = levels.as_ref().map(|levels| levels.typed_c.as_slice());
+    let precipitation = read_precipitation_change(&mut section, typed_c, reference_c);
     section.finish();
-    let mut levels_c = levels_c?;
+    let Levels { typed_c: mut levels_c, global } = levels?;
     if !levels_c.contains(&reference_c) {
         levels_c.push(reference_c);
     }
@@ -53,40 +40,10 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
     let warming = Warming {
         tmin_monthly_shape: tmin.unwrap_or(both),
         tmax_monthly_shape: tmax.unwrap_or(both),
-        precipitation_change_pct_per_c,
+        precipitation: precipitation?,
+        global,
     };
     Some(WarmingTyped { levels_c, reference, warming })
-}
-
-fn check_levels(section: &Section<'_>, levels: Vec<f64>) -> Option<Vec<f64>> {
-    let mut sound = true;
-    let mut complain = |at: usize, found: String, expected: &str, mend: &str| {
-        section.fault(Fault::key(section.path_of(&format!("levels_c[{at}]")), found, expected, mend));
-        sound = false;
-    };
-    for (at, level) in levels.iter().enumerate() {
-        if !(-10.0..=15.0).contains(level) {
-            complain(
-                at,
-                level.to_string(),
-                "a warming from -10 to 15 degC",
-                "it is degC, not degF or percent",
-            );
-        } else if levels[..at].contains(level) {
-            complain(at, format!("{level} a second time"), "each level once", "take one of them out");
-        }
-    }
-    if levels.is_empty() || levels.len() > MOST_LEVELS {
-        let found = format!("{} levels", levels.len());
-        section.fault(Fault::key(
-            section.path_of("levels_c"),
-            found,
-            format!("1 to {MOST_LEVELS} levels"),
-            "for example levels_c = [0, 1, 2, 3]",
-        ));
-        sound = false;
-    }
-    sound.then(|| levels.into_iter().map(|level| level + 0.0).collect())
 }
 
 fn shape(section: &mut Section<'_>, key: &'static str) -> Option<[f64; 12]> {

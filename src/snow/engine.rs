@@ -10,7 +10,7 @@ use super::lanes::{Lanes, ROW_MULTIPLE};
 use super::ledger::{self, OpenLedger};
 use super::params::{DegreeRule, PhaseRule};
 use super::passes::{diurnal_degrees_row, mean_degrees_row, mean_row, split_row, store_row};
-use super::{linear_snow_fraction, step_snow_fraction};
+use super::{linear_snow_fraction, step_snow_fraction, tanh_snow_fraction};
 use crate::weather::YearView;
 use multiversion::multiversion;
 
@@ -162,6 +162,7 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
                 PhaseRule::Step { .. } => split(state, lanes, precipitation_mm, share, |mean, warm, _| {
                     step_snow_fraction(mean, warm)
                 }),
+                PhaseRule::Tanh => split(state, lanes, precipitation_mm, share, tanh_snow_fraction),
             }
             from = first_with_any(&state.snow[..with_snow]);
             bare_rain_row(state, from, bare_ground_rain);

@@ -1,7 +1,7 @@
 //! Lanes: every band at every level as one column of numbers. The only place where options meet.
 
 use super::melt::degree_day_factor;
-use super::params::{DegreeRule, PhaseRule, SnowParams};
+use super::params::{DegreeRule, PhaseRule, SnowParams, TANH_MIDDLE_C, TANH_PER_C};
 use crate::basin::Basin;
 use crate::perturb::MonthlyChange;
 
@@ -51,9 +51,9 @@ pub struct Lanes {
     pub(super) degree_day_factor: Vec<f64>,
     /// Melt base temperature, degC.
     pub(super) melt_base_c: Vec<f64>,
-    /// `linear`: rain only above; `step`: the threshold, degC.
+    /// `linear`: rain only above; `step`: the threshold; `tanh`: the middle, degC.
     pub(super) phase_warm_c: Vec<f64>,
-    /// `linear`: 1/(R - S), per degC.
+    /// `linear`: 1/(R - S); `tanh`: the slope, per degC.
     pub(super) phase_per_c: Vec<f64>,
     pub(super) holding_fraction: Vec<f64>,
     pub(super) refreeze_fraction: Vec<f64>,
@@ -169,6 +169,7 @@ impl Lanes {
                 (rain_only_above_c, 1.0 / (rain_only_above_c - snow_only_below_c))
             }
             PhaseRule::Step { half_snow_at_c } => (half_snow_at_c, 0.0),
+            PhaseRule::Tanh => (TANH_MIDDLE_C, TANH_PER_C),
         };
         self.holding_fraction[lane] = spec.snow.liquid_holding_fraction;
         self.refreeze_fraction[lane] = spec.snow.refreeze_fraction;

@@ -24,7 +24,7 @@ pub use lanes::{LaneSpec, Lanes, ROW_MULTIPLE};
 pub use ledger::OpenLedger;
 pub use melt::{RAIN_MELT_PER_MM_C, degree_day_factor, potential_melt};
 pub use params::{DegreeRule, PhaseRule, RawSnow, SnowParams};
-pub use phase::{linear_snow_fraction, step_snow_fraction};
+pub use phase::{linear_snow_fraction, step_snow_fraction, tanh_snow_fraction};
 pub use step::{Fluxes, LaneConst, LaneDay, Pack, step};
 
 /// The larger of two numbers, neither of them NaN: one instruction, where `f64::max` also orders NaN.

@@ -20,7 +20,14 @@ pub enum PhaseRule {
         /// The threshold, degC.
         half_snow_at_c: f64,
     },
+    /// A smooth curve, with the slope and the middle that Dai (2008) gives for land.
+    Tanh,
 }
+
+/// Slope of the `tanh` rule over land, per degC (Dai 2008, abstract).
+pub(super) const TANH_PER_C: f64 = 0.7;
+/// Half snow of the `tanh` rule over land, degC (Dai 2008, abstract).
+pub(super) const TANH_MIDDLE_C: f64 = 1.2;
 
 impl PhaseRule {
     /// The `linear` rule between -1 and 3 degC.
@@ -37,6 +44,7 @@ impl PhaseRule {
                 1.0 / (rain_only_above_c - snow_only_below_c),
             ),
             Self::Step { half_snow_at_c } => super::step_snow_fraction(mean_c, half_snow_at_c),
+            Self::Tanh => super::tanh_snow_fraction(mean_c, TANH_MIDDLE_C, TANH_PER_C),
         }
     }
 }
@@ -190,6 +198,7 @@ impl SnowParams {
                 let mend = "-0.4 to 2.4 degC holds 95 % of stations";
                 within(faults, "snow.rain_snow.half_snow_at_c", half_snow_at_c, -20.0..=20.0, "degC", mend);
             }
+            PhaseRule::Tanh => {}
         }
     }
 
@@ -210,6 +219,7 @@ impl SnowParams {
                 (snow_only_below_c + rain_only_above_c) / 2.0
             }
             PhaseRule::Step { half_snow_at_c } => half_snow_at_c,
+            PhaseRule::Tanh => TANH_MIDDLE_C,
         };
         if !(-0.4..=2.4).contains(&half_snow_c) {
             found.push(Unlikely::new(

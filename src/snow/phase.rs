@@ -20,3 +20,16 @@ pub fn linear_snow_fraction(mean_c: f64, rain_only_above_c: f64, per_c: f64) -> 
 pub fn step_snow_fraction(mean_c: f64, threshold_c: f64) -> f64 {
     if mean_c <= threshold_c { 1.0 } else { 0.0 }
 }
+
+/// A smooth curve: `(1 - tanh(b*(T - c)))/2`, half snow at c (after Dai 2008).
+///
+/// `middle_c` is c and `per_c` is b. It never quite reaches 0 or 1.
+///
+/// ```
+/// use thawline::snow::tanh_snow_fraction;
+/// assert_eq!(tanh_snow_fraction(1.2, 1.2, 0.7), 0.5);
+/// ```
+#[inline(always)]
+pub fn tanh_snow_fraction(mean_c: f64, middle_c: f64, per_c: f64) -> f64 {
+    (1.0 - libm::tanh(per_c * (mean_c - middle_c))) / 2.0
+}

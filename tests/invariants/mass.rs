@@ -3,6 +3,7 @@
 use super::cases;
 use super::scenario::{Scenario, scenarios};
 use proptest::prelude::*;
+use thawline::perturb::PrecipitationChange;
 use thawline::snow::{Path, YearBlock};
 
 proptest! {
@@ -55,7 +56,7 @@ proptest! {
     /// With precipitation unchanged, a warmer level has no more snowfall in any band on any day, and the same total.
     #[test]
     fn warmer_is_never_more_snowfall(mut scenario in scenarios(), more_c in 0.01..5.0) {
-        scenario.warming.precipitation_change_pct_per_c = 0.0;
+        scenario.warming.precipitation = PrecipitationChange::PctPerC([0.0; 12]);
         let cool_c = scenario.levels_c[0];
         let changes = [scenario.warming.at(cool_c), scenario.warming.at(cool_c + more_c)];
         let lanes = scenario.lanes(&changes);

@@ -10,7 +10,7 @@ use rand::rngs::ChaCha8Rng;
 use rand::{RngExt, SeedableRng};
 use thawline::basin::{Band, Basin, PrecipitationGradient, TemperatureGradient};
 use thawline::calendar::{MonthDay, WaterYearStart};
-use thawline::perturb::{MonthlyChange, Warming};
+use thawline::perturb::{MonthlyChange, PrecipitationChange, StatedChange, Warming};
 use thawline::snow::{DegreeRule, Engine, LaneSpec, Lanes, Path, PhaseRule, SnowParams, YearBlock};
 use thawline::weather::{Series, YearSpan};
 
@@ -69,6 +69,7 @@ fn phase_rules() -> impl Strategy<Value = PhaseRule> {
             rain_only_above_c: snow_only_below_c + width_c,
         }),
         (-1.0..3.0).prop_map(|half_snow_at_c| PhaseRule::Step { half_snow_at_c }),
+        Just(PhaseRule::Tanh),
     ]
 }
 
@@ -109,7 +110,8 @@ prop_compose! {
         levels_c in vec(-3.0..6.0, 1..4),
         tmin_monthly_shape in uniform12(0.2..1.8),
         tmax_monthly_shape in uniform12(0.2..1.8),
-        precipitation_change_pct_per_c in prop_oneof![Just(0.0), -8.0..8.0],
+        pct_per_c in prop_oneof![Just([0.0; 12]), (-8.0..8.0).prop_map(|pct| [pct; 12]), uniform12(-8.0..8.0)],
+        pct_by_level in prop::option::of(vec(uniform12(-40.0..40.0), 1..4)),
         snow in snow_params(),
         climate in climates(),
     ) -> Scenario {
@@ -119,6 +121,13 @@ prop_compose! {
             area_km2,
             elevation_m,
         });
+        let precipitation = match pct_by_level {
+            None => PrecipitationChange::PctPerC(pct_per_c),
+            Some(stated) => PrecipitationChange::PctByLevel(
+                levels_c.iter().zip(stated).map(|(level_c, pct)| StatedChange { level_c: *level_c, pct }).collect(),
+            ),
+        };
+        let warming = Warming { tmin_monthly_shape, tmax_monthly_shape, precipitation, global: None };
         Scenario {
             basin: Basin {
                 latitude_deg: if climate.is_southern { -45.0 } else { 45.0 },
@@ -130,7 +139,7 @@ prop_compose! {
             precipitation_pct_per_100m,
             precipitation_top_m,
             levels_c,
-            warming: Warming { tmin_monthly_shape, tmax_monthly_shape, precipitation_change_pct_per_c },
+            warming,
             snow,
             climate,
         }
@@ -230,12 +239,25 @@ impl Scenario {
             level_c,
             tmin_shape: self.warming.tmin_monthly_shape,
             tmax_shape: self.warming.tmax_monthly_shape,
-            precipitation_change_pct_per_c: self.warming.precipitation_change_pct_per_c,
+            precipitation_change_pct_per_c: match &self.warming.precipitation {
+                PrecipitationChange::PctPerC(pct) => *pct,
+                PrecipitationChange::PctByLevel(_) => [0.0; 12],
+            },
+            precipitation_change_pct: match &self.warming.precipitation {
+                PrecipitationChange::PctPerC(_) => None,
+                PrecipitationChange::PctByLevel(stated) => Some(
+                    stated
+                        .iter()
+                        .find(|stated| stated.level_c == level_c)
+                        .map_or([0.0; 12], |stated| stated.pct),
+                ),
+            },
             phase: match self.snow.rain_snow {
                 PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => {
                     naive::Phase::Linear { snow_c: snow_only_below_c, rain_c: rain_only_above_c }
                 }
                 PhaseRule::Step { half_snow_at_c } => naive::Phase::Step { threshold_c: half_snow_at_c },
+                PhaseRule::Tanh => naive::Phase::Tanh,
             },
             degrees: match self.snow.degree_rule {
                 DegreeRule::Mean => naive::Degrees::Mean,

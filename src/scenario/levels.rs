@@ -1,0 +1,112 @@
+//! `warming.levels_c`, or `[warming.global]` with levels of global warming.
+
+use super::section::Section;
+use crate::fault::Fault;
+use crate::perturb::GlobalWarming;
+
+/// A study of more levels than this is a mistyped list.
+const MOST_LEVELS: usize = 40;
+/// Land has warmed 1.46 times the globe from 1850-1900 to 2011-2020 (IPCC AR6: 1.59 over 1.09 degC).
+const USUAL_LOCAL_PER_GLOBAL: std::ops::RangeInclusive<f64> = 0.8..=2.5;
+/// Global warming by the middle of any instrumental record so far, degC.
+const USUAL_ALREADY_C: std::ops::RangeInclusive<f64> = 0.0..=1.6;
+
+/// The levels in the order in which they were typed, as warming of the basin, degC.
+pub(super) struct Levels {
+    pub typed_c: Vec<f64>,
+    pub global: Option<GlobalWarming>,
+}
+
+pub(super) fn read_levels(section: &mut Section<'_>) -> Option<Levels> {
+    if section.has("global") {
+        if section.has("levels_c") {
+            section.fault(Fault::key(
+                section.path_of("levels_c"),
+                "levels_c beside [warming.global]",
+                "one of the two",
+                "levels of the basin's own warming, or of global warming: take one out",
+            ));
+        }
+        section.knows("levels_c");
+        return read_global(section.section("global"));
+    }
+    section.knows("global");
+    let levels = section.numbers("levels_c");
+    let typed_c = match levels {
+        Some(levels) => check(section, levels),
+        None if section.has("levels_c") => None,
+        None => {
+            section.default("levels_c", "[0, 1, 2, 3, 4]");
+            Some(vec![0.0, 1.0, 2.0, 3.0, 4.0])
+        }
+    };
+    Some(Levels { typed_c: typed_c?, global: None })
+}
+
+fn read_global(mut section: Section<'_>) -> Option<Levels> {
+    let levels = section.numbers("levels_c");
+    if levels.is_none() && !section.has("levels_c") {
+        section.fault(Fault::key(
+            section.path_of("levels_c"),
+            "no 'levels_c'",
+            "levels of global warming above 1850-1900, degC",
+            "for example levels_c = [1.5, 2, 3]",
+        ));
+    }
+    let levels = levels.and_then(|levels| check(&section, levels));
+    let local_per_global = section.required_number(
+        "local_per_global",
+        0.1..=5.0,
+        "degrees that the basin warms per degree of global warming; land as a whole 1.46 so far (IPCC AR6)",
+    );
+    let already = section.required_number(
+        "already_in_record_global_c",
+        -1.0..=5.0,
+        "global warming above 1850-1900 that the record already holds, at its mid-year: 1.09 for 2011-2020 (IPCC AR6)",
+    );
+    if local_per_global.is_some_and(|ratio| !USUAL_LOCAL_PER_GLOBAL.contains(&ratio)) {
+        section.unlikely("local_per_global", "outside 0.8 to 2.5; land as a whole has 1.46 (IPCC AR6)");
+    }
+    if already.is_some_and(|already_c| !USUAL_ALREADY_C.contains(&already_c)) {
+        section.unlikely(
+            "already_in_record_global_c",
+            "outside 0 to 1.6 degC; 2011-2020 was 1.09 above 1850-1900 (IPCC AR6)",
+        );
+    }
+    section.finish();
+    let global = GlobalWarming { local_per_global: local_per_global?, already_in_record_c: already? };
+    let typed_c = levels?.into_iter().map(|level_c| global.local_c(level_c)).collect();
+    Some(Levels { typed_c, global: Some(global) })
+}
+
+/// Every level within its range and once.
+fn check(section: &Section<'_>, levels: Vec<f64>) -> Option<Vec<f64>> {
+    let mut sound = true;
+    let mut complain = |at: usize, found: String, expected: &str, mend: &str| {
+        section.fault(Fault::key(section.path_of(&format!("levels_c[{at}]")), found, expected, mend));
+        sound = false;
+    };
+    for (at, level) in levels.iter().enumerate() {
+        if !(-10.0..=15.0).contains(level) {
+            complain(
+                at,
+                level.to_string(),
+                "a warming from -10 to 15 degC",
+                "it is degC, not degF or percent",
+            );
+        } else if levels[..at].contains(level) {
+            complain(at, format!("{level} a second time"), "each level once", "take one of them out");
+        }
+    }
+    if levels.is_empty() || levels.len() > MOST_LEVELS {
+        let found = format!("{} levels", levels.len());
+        section.fault(Fault::key(
+            section.path_of("levels_c"),
+            found,
+            format!("1 to {MOST_LEVELS} levels"),
+            "for example levels_c = [0, 1, 2, 3]",
+        ));
+        sound = false;
+    }
+    sound.then(|| levels.into_iter().map(|level| level + 0.0).collect())
+}
