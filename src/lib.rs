@@ -7,6 +7,7 @@
 #![forbid(unsafe_code)]
 #![deny(clippy::print_stdout, clippy::print_stderr)]
 
+pub mod baseline;
 pub mod basin;
 pub mod calendar;
 pub mod cli;

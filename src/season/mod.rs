@@ -6,6 +6,7 @@
 //! In rows of numbers a measure that has no value is [`NONE`], and snow that never went is [`NOT_GONE`]: ordered as the
 //! statistics want them, before and after every date. [`Outcome`] is the same, said in words.
 
+mod cover;
 mod measure;
 mod melt;
 mod outflow;
@@ -13,6 +14,7 @@ mod period;
 mod rows;
 mod state;
 
+pub use cover::{SEASONAL_COVER_DAYS, is_seasonal, longest_cover_days};
 pub use measure::{Kind, Measure, NONE, NOT_GONE, Outcome, Place};
 pub use melt::keeps_snow;
 pub use period::period_value;

@@ -3,7 +3,7 @@
 use super::case::Case;
 use super::closed_season::{self, Season};
 use super::days::{flat_basin, one_year, plain_snow};
-use thawline::basin::{Basin, TemperatureGradient};
+use thawline::basin::{Basin, PrecipitationGradient, TemperatureGradient};
 use thawline::perturb::{MonthlyChange, Warming};
 use thawline::snow::{Engine, LaneSpec, Lanes, SnowParams};
 
@@ -38,6 +38,35 @@ impl UniformArea {
         let groups: Vec<_> = changes.iter().map(group).collect();
         Lanes::new(&groups)
     }
+}
+
+/// Temperature and precipitation of one day at several elevations, carried there from a station at 0 m.
+pub fn weather_over_bands(case: &Case) {
+    let elevations_m: Vec<f64> = case.input("elevations_m");
+    let mut basin = flat_basin();
+    basin.temperature = TemperatureGradient::constant(-case.input::<f64>("lapse_c_per_km"));
+    let gradient: Option<f64> = case.input_or_none("gradient_pct_per_100m");
+    basin.precipitation = PrecipitationGradient::new(gradient.unwrap_or(0.0), None);
+    let precipitation_mm: f64 = case.input_or_none("precipitation_mm").unwrap_or(0.0);
+    let snow = plain_snow(case);
+    let spec = |elevation_m: &f64| LaneSpec {
+        basin: &basin,
+        station_m: 0.0,
+        elevation_m: *elevation_m,
+        change: &MonthlyChange::NONE,
+        snow: &snow,
+        share: 1.0 / elevations_m.len() as f64,
+    };
+    let lanes = Lanes::new(&[elevations_m.iter().map(spec).collect::<Vec<_>>()]);
+    let series = one_year(0.0, &[case.input("mean_at_foot_c")], &[0.0], &[precipitation_mm]);
+    let mut engine = Engine::new(&lanes, true);
+    let block = engine.year(series.view(&series.years[0])).expect("a closed ledger");
+    let detail = block.detail.as_ref().expect("detail was asked for");
+    let at = |band: usize| detail.width + lanes.column(0, band);
+    let bands = 0..elevations_m.len();
+    case.check("mean_c", &bands.clone().map(|band| detail.mean_c[at(band)]).collect::<Vec<_>>());
+    let fallen = bands.map(|band| detail.rain_mm[at(band)] + detail.snow_mm[at(band)]);
+    case.check("precipitation_mm", &fallen.collect::<Vec<_>>());
 }
 
 /// The basin's mean melt on one warm day, for several numbers of bands.

@@ -9,24 +9,36 @@ mod case;
 mod closed_season;
 mod days;
 mod statistics;
+mod trends;
+mod units;
 
 use case::Case;
 
 /// What a case is run through.
 type Runner = fn(&Case);
 
-const RUNNERS: [(&str, Runner); 11] = [
+const RUNNERS: [(&str, Runner); 21] = [
     ("days", days::days),
     ("precipitation factor", days::precipitation_factor),
     ("temperature shift", days::temperature_shift),
     ("melt over bands", bands::melt_over_bands),
     ("season over bands", bands::season_over_bands),
+    ("weather over bands", bands::weather_over_bands),
     ("closed season", closed_season::closed_season),
     ("water-year days", calendar::water_year_days),
+    ("water years", calendar::water_years),
     ("melt dates", calendar::melt_dates),
+    ("survey and peak", calendar::survey_and_peak),
+    ("cover", calendar::cover),
     ("quantiles", statistics::quantiles),
     ("two-way variance", statistics::two_way),
     ("signal to noise", statistics::noise),
+    ("trend", trends::trend),
+    ("proportion", trends::proportion),
+    ("temperature differences", units::temperature_differences),
+    ("areas", units::areas),
+    ("volumes", units::volumes),
+    ("water over an area", units::water_over_an_area),
 ];
 
 fn run(text: &str) {
@@ -40,7 +52,7 @@ fn run(text: &str) {
     }
 }
 
-/// Degree-day melt, the sine day, melt by rain, rain or snow.
+/// Degree-day melt, the sine day, melt by rain, rain or snow, gradients.
 #[test]
 fn one_day_physics() {
     run(include_str!("physics.toml"));
@@ -58,7 +70,7 @@ fn changes() {
     run(include_str!("changes.toml"));
 }
 
-/// Days of the water year.
+/// Days of the water year, dates and covers of a year's snow.
 #[test]
 fn water_year() {
     run(include_str!("calendar.toml"));
@@ -68,4 +80,16 @@ fn water_year() {
 #[test]
 fn statistics_of_small_tables() {
     run(include_str!("statistics.toml"));
+}
+
+/// Trend, slope and step of a record; the interval of a count.
+#[test]
+fn trends_of_a_record() {
+    run(include_str!("trends.toml"));
+}
+
+/// Units at the door, and volumes of water.
+#[test]
+fn units_and_volumes() {
+    run(include_str!("units.toml"));
 }

@@ -1,0 +1,104 @@
+//! The baseline: what the record's own years say before anything is perturbed (method, section 11).
+//!
+//! A trend or a step in the record says how far its years stand for one climate. `seasons` makes yearly values of it;
+//! `mann_kendall`, `theil_sen` and `pettitt` ask them for a trend, its size and a step; `wilson` is the interval of a
+//! count over the record's years; `detrend` takes a trend of temperature out. A test sees nothing of a series but its
+//! `ranks`, years and values.
+
+mod detrend;
+mod mann_kendall;
+mod pettitt;
+mod ranks;
+mod seasons;
+#[cfg(test)]
+mod tests;
+mod theil_sen;
+mod wilson;
+
+pub use detrend::{Detrended, detrend};
+pub use mann_kendall::{MannKendall, ScoreTest, mann_kendall};
+pub use pettitt::{Pettitt, pettitt};
+pub use seasons::{SeasonYears, Seasons, Yearly};
+pub use theil_sen::{TheilSen, theil_sen};
+pub use wilson::wilson;
+
+use crate::calendar::MonthDay;
+use crate::weather::Series;
+use serde::Serialize;
+
+/// No test is made of fewer years.
+///
+/// All three tests take their chances from large-sample forms: the normal distribution for Kendall's score and for the
+/// interval of the slope, Pettitt's exponential for the step. Below eight years the score is too coarse for them.
+pub const LEAST_YEARS: usize = 8;
+
+/// A test is called significant below this p.
+pub const SIGNIFICANT_BELOW_P: f64 = 0.05;
+
+/// Quantile of the standard normal distribution at 0.975.
+const NORMAL_975: f64 = 1.959_963_984_540_054;
+
+/// A record's years, and whether their seasons hold a trend or a step.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct Baseline {
+    /// First usable water year.
+    pub first_water_year: i32,
+    /// Last usable water year.
+    pub last_water_year: i32,
+    /// Mean of the usable water years: the time that the record stands for.
+    pub mid_year: f64,
+    /// How many water years are usable.
+    pub usable_years: usize,
+    /// Mean temperature of the cool season, slopes in degC per year.
+    pub cool_temperature: Option<YearlyTests>,
+    /// Precipitation of the cool season, slopes in mm per year.
+    pub cool_precipitation: Option<YearlyTests>,
+    /// Mean temperature of the warm season, slopes in degC per year.
+    pub warm_temperature: Option<YearlyTests>,
+}
+
+/// The three tests of one yearly series.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct YearlyTests {
+    /// Years tested.
+    pub n: usize,
+    /// Whether there is a trend.
+    pub mann_kendall: MannKendall,
+    /// How large it is.
+    pub theil_sen: TheilSen,
+    /// Whether there is a step, and after which year.
+    pub pettitt: Pettitt,
+}
+
+impl Baseline {
+    /// The baseline of a record's usable years; the cool season ends as `survey`, the first survey date, begins.
+    ///
+    /// Nothing for a series without years. Precipitation is tested as the series holds it: before or after gauge catch,
+    /// and with days that lack it as dry.
+    pub fn of(series: &Series, survey: MonthDay) -> Option<Self> {
+        let (first, last) = (series.years.first()?, series.years.last()?);
+        let sum: f64 = series.years.iter().map(|year| f64::from(year.water_year)).sum();
+        let seasons = Seasons::of(series, survey);
+        Some(Self {
+            first_water_year: first.water_year,
+            last_water_year: last.water_year,
+            mid_year: sum / series.years.len() as f64,
+            usable_years: series.years.len(),
+            cool_temperature: YearlyTests::of(&seasons.cool.mean_c),
+            cool_precipitation: YearlyTests::of(&seasons.cool.precipitation_mm),
+            warm_temperature: YearlyTests::of(&seasons.warm.mean_c),
+        })
+    }
+}
+
+impl YearlyTests {
+    /// The tests of a yearly series; none of fewer than [`LEAST_YEARS`] years, and none where all values are the same.
+    pub fn of(yearly: &Yearly) -> Option<Self> {
+        Some(Self {
+            n: yearly.len(),
+            mann_kendall: mann_kendall(yearly)?,
+            theil_sen: theil_sen(yearly)?,
+            pettitt: pettitt(yearly)?,
+        })
+    }
+}
