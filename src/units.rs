@@ -1,4 +1,8 @@
-//! Units at the door: what a file states becomes degC and mm here, and nowhere else.
+//! Units at the door: what a file states becomes degC and mm here, and nowhere else. `system` is the way out, to a reader.
+
+mod system;
+
+pub use system::{Unit, UnitSystem};
 
 use serde::Serialize;
 

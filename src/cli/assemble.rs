@@ -6,7 +6,7 @@ use super::input::{InputFile, ScenarioFile, missing_file, read_data, read_scenar
 use crate::basin::Basin;
 use crate::fault::{Fault, Unlikely};
 use crate::perturb::MonthlyChange;
-use crate::report::{Input, Origin};
+use crate::report::{Input, Origin, Reader};
 use crate::scenario::{DefaultInForce, Document, Draft, Scenario};
 use crate::snow::{LaneSpec, Lanes, correct_catch};
 use crate::weather::{Record, Series};
@@ -119,6 +119,11 @@ impl Ready {
             seed: self.scenario.seed,
             inputs: inputs.collect(),
         }
+    }
+
+    /// Who reads what the command says.
+    pub fn reader(&self) -> Reader {
+        Reader { units: self.scenario.report.units, starts: self.scenario.season.water_year_starts }
     }
 
     /// Mean yearly precipitation at the station, corrected for catch, mm.

@@ -5,7 +5,7 @@ use super::assemble::{Ready, assemble};
 use super::failure::Failure;
 use super::output;
 use crate::report::SCHEMA_VERSION;
-use crate::report::numbers::{amount, fixed, signed};
+use crate::report::numbers::{fixed, signed};
 use crate::scenario::DefaultInForce;
 use crate::season::SeasonSettings;
 use crate::snow::SnowParams;
@@ -74,7 +74,7 @@ fn document(ready: &Ready) -> Checked<'_> {
 }
 
 fn words(ready: &Ready) -> String {
-    let mut text = String::new();
+    let (mut text, reader) = (String::new(), ready.reader());
     let mut line = |name: &str, what: String| {
         let _ = writeln!(text, "{name:<26}{what}");
     };
@@ -88,7 +88,7 @@ fn words(ready: &Ready) -> String {
         .map_or(String::new(), |(first, last)| format!(", from {} to {}", first.water_year, last.water_year));
     line("water years in use", format!("{}{span}", years.len()));
     for year in &ready.record.skipped {
-        let why: Vec<String> = year.why.iter().map(ToString::to_string).collect();
+        let why: Vec<String> = year.why.iter().map(|why| why.words(reader.units)).collect();
         line("  left out", format!("{}: {}", year.water_year, why.join("; ")));
     }
     line("dates without a line", counts.absent_days.to_string());
@@ -115,38 +115,43 @@ fn words(ready: &Ready) -> String {
                 "set back {} times; {} small falls, {} in all, taken for noise; {} between missing readings, not run",
                 gauge.resets,
                 gauge.small_falls,
-                amount(gauge.small_falls_mm),
-                amount(gauge.between_readings_mm)
+                reader.amount(gauge.small_falls_mm),
+                reader.amount(gauge.between_readings_mm)
             ),
         );
     }
     let means = ready.record.means();
-    let degrees = |value: f64| signed(value, 1);
+    let unit = reader.units.temperature();
+    let degrees = |value: f64| signed(unit.of(value), 1);
     line(
         "station temperature",
         format!(
-            "{} degC over the year, {} in January, {} in July",
+            "{} {} over the year, {} in January, {} in July",
             degrees(means.year_c),
+            unit.suffix,
             degrees(means.month_c[0]),
             degrees(means.month_c[6])
         ),
     );
     let (station_mm, ratio) = (ready.mean_precipitation_mm(), ready.precipitation_ratio());
-    line("station precipitation", format!("{} a year, catch corrected", amount(station_mm)));
+    line("station precipitation", format!("{} a year, catch corrected", reader.amount(station_mm)));
     line(
         "basin precipitation",
         format!(
             "{} a year, {} times the station's: hold it against a value you know",
-            amount(station_mm * ratio),
+            reader.amount(station_mm * ratio),
             fixed(ratio, 2)
         ),
     );
     let bands = &ready.basin.bands;
     let range = bands.first().zip(bands.last()).map_or(String::new(), |(low, high)| {
-        format!(", {} to {} m", fixed(low.lower_m, 0), fixed(high.upper_m, 0))
+        format!(", {} to {}", reader.elevation_bare(low.lower_m), reader.elevation(high.upper_m))
     });
-    line("bands", format!("{}{range}, {} km2", bands.len(), fixed(ready.basin.area_km2(), 1)));
-    line("levels, degC", format!("{:?}", ready.scenario.warming.levels_c));
+    let area = reader.area_bare(ready.basin.area_km2());
+    line("bands", format!("{}{range}, {area} {}", bands.len(), reader.units.area().suffix));
+    let levels: Vec<String> =
+        ready.scenario.warming.levels_c.iter().map(|level_c| reader.level(*level_c)).collect();
+    line("levels", levels.join(", "));
     line("snow model", "not fitted to observed snow".to_owned());
     for default in &ready.defaults {
         line("default in force", format!("{} = {}", default.key, default.value));

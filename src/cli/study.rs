@@ -12,7 +12,7 @@ use crate::findings::{Findings, Questions, answer};
 use crate::perturb::YearBlocks;
 use crate::report::numbers::counted;
 use crate::report::{
-    Answer, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html, manifest_json,
+    Answer, Reader, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html, manifest_json,
     publish, summary_json, tables,
 };
 use crate::season::Measures;
@@ -59,7 +59,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
 
     progress.stage("writing figures, tables and briefing");
     let study = describe(&ready, &measures, &findings, path, shared)?;
-    let answer = answer_in_words(&findings, study.mean_change_sd_pct);
+    let answer = answer_in_words(&findings, study.mean_change_sd_pct, study.reader);
     let files = write_files(&study, &answer)?;
     if is_interrupted() {
         return Err(Failure::Interrupted);
@@ -151,6 +151,7 @@ fn describe<'a>(
         record_years(&lanes, measures, &ready.weather).map_err(|open| Failure::Ours(open.to_string()))?;
     Ok(Study {
         title: &scenario.title,
+        reader: ready.reader(),
         basin: &ready.basin,
         station_elevation_m: scenario.weather.station_elevation_m,
         gauge_multiplier: scenario.weather.gauge_multiplier,
@@ -175,7 +176,8 @@ fn describe<'a>(
 
 fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Failure> {
     let ours = |error: serde_json::Error| Failure::Ours(error.to_string());
-    let setting = Setting { study_title: study.title, water_year_starts: study.starts() };
+    let Reader { units, starts: water_year_starts } = study.reader;
+    let setting = Setting { study_title: study.title, units, water_year_starts };
     let mut files = Vec::new();
     let mut drawn = Vec::new();
     for figure in &FIGURES {

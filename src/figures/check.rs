@@ -5,6 +5,7 @@ mod studies;
 use super::{FIGURES, Setting, text_width};
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::findings::Findings;
+use crate::units::UnitSystem;
 use studies::{PLAIN, Study, studies};
 
 /// Left, top, right, bottom and words of a text.
@@ -46,8 +47,10 @@ fn text_lies_inside_and_apart_and_is_large_enough() {
     let long =
         "Alder Fork above Lantern Reservoir, planning study for the water users of the valley, ".repeat(4);
     for (name, study) in studies() {
-        for title in ["Alder Fork", long.as_str()] {
-            for svg in study.draw(title, 10) {
+        let both = [UnitSystem::Metric, UnitSystem::Us]
+            .map(|units| ["Alder Fork", &long].map(|title| (units, title)));
+        for (units, title) in both.into_iter().flatten() {
+            for svg in study.draw_in(units, title, 10) {
                 let [width, height] = view_box(&svg.text);
                 let texts = texts(&svg.text);
                 for (at, ([left, top, right, bottom], words)) in texts.iter().enumerate() {
@@ -113,6 +116,32 @@ fn titles_turn_round_when_the_numbers_do() {
     assert!(cold[1].contains("does not outweigh"), "{cold:?}");
 }
 
+/// The same study in US units: ticks are round in inches, and no word is metric. By hand, 120 mm are 4.7 in, the reference's
+/// 5-95 % of about 348 and 512 mm need an axis to 25 in, and +2 degC is +3.6 degF.
+#[test]
+fn figures_in_us_units() {
+    let figures = PLAIN.draw_in(UnitSystem::Us, "Alder Fork", 10);
+    assert!(
+        figures[0].title.starts_with("1 April SWE is 4.7 in (28 %) lower at +3.6 °F; only from +2."),
+        "{figures:?}"
+    );
+    assert!(figures[1].title.contains("earlier at +3.6 °F"), "{}", figures[1].title);
+    let words: Vec<String> = texts(&figures[0].text).into_iter().map(|(_, words)| words).collect();
+    let ticks: Vec<&str> =
+        words.iter().map(String::as_str).filter(|word| word.parse::<f64>().is_ok()).collect();
+    assert_eq!(ticks, ["0", "5", "10", "15", "20", "25"]);
+    for svg in &figures {
+        for metric in ["mm", "°C"] {
+            let said = [&svg.text, &svg.caption, &svg.alt];
+            assert!(
+                said.iter().all(|text| !text.contains(&format!(" {metric}"))),
+                "{metric} in {}",
+                svg.title
+            );
+        }
+    }
+}
+
 #[test]
 fn each_figure_is_named_for_readers_who_do_not_see_it() {
     for (figure, svg) in FIGURES.iter().zip(PLAIN.draw("Alder Fork", 10)) {
@@ -130,6 +159,7 @@ fn each_figure_is_named_for_readers_who_do_not_see_it() {
 fn figures_without_their_measures_are_not_drawn() {
     let setting = Setting {
         study_title: "Alder Fork",
+        units: UnitSystem::Metric,
         water_year_starts: WaterYearStart(MonthDay::new(10, 1).unwrap()),
     };
     let findings = Findings { basin: Vec::new(), ..PLAIN.findings() };

@@ -1,10 +1,11 @@
 //! The finding of a measure as a sentence, which turns round when the numbers do.
 
+use super::Setting;
 use super::labels::{
-    between_levels, day_of_month, days_in_words, is_nothing, level, percent_size, sentence, size,
+    between_levels, day_of_month, days_in_words, is_nothing, level, percent_size, sentence, size_and_unit,
 };
-use crate::calendar::WaterYearStart;
 use crate::findings::{Crossing, Findings, MeasureFindings};
+use crate::units::UnitSystem;
 
 /// The level that a headline speaks of: the first at which the shift outweighs the spread, else the warmest; where none
 /// is warmer than the reference, the coldest.
@@ -20,7 +21,7 @@ fn spoken_of(findings: &Findings, measure: &MeasureFindings) -> Option<usize> {
 
 /// `1 April SWE is 112 mm (27 %) lower at +2 °C; only from +1.4 °C on does the shift outweigh the
 /// precipitation spread`.
-pub(super) fn of_amount(findings: &Findings, measure: &MeasureFindings) -> String {
+pub(super) fn of_amount(findings: &Findings, measure: &MeasureFindings, units: UnitSystem) -> String {
     let title = sentence(&measure.measure.title);
     let spoken = spoken_of(findings, measure).and_then(|at| measure.levels.get(at));
     let Some(spoken) = spoken else {
@@ -28,23 +29,28 @@ pub(super) fn of_amount(findings: &Findings, measure: &MeasureFindings) -> Strin
             measure.levels.get(findings.reference).and_then(|reference| reference.periods.q50.value());
         return match median {
             Some(median) => {
-                format!("{title} is {} mm at the reference; no other level was run", size(median))
+                format!(
+                    "{title} is {} at the reference; no other level was run",
+                    size_and_unit(units, median)
+                )
             }
             None => format!("{title} has no value at the reference; no other level was run"),
         };
     };
-    let place = level(spoken.level_c);
+    let place = level(units, spoken.level_c);
     let what = match (&spoken.shift, spoken.percent_change) {
         (None, _) => format!("{title} has no value to compare at {place}"),
-        (Some(shift), _) if is_nothing(shift.median.value) => format!("{title} is unchanged at {place}"),
+        (Some(shift), _) if is_nothing(units, shift.median.value) => {
+            format!("{title} is unchanged at {place}")
+        }
         (Some(shift), percent) => {
             let direction = if shift.median.value < 0.0 { "lower" } else { "higher" };
             let percent =
                 percent.map_or_else(String::new, |percent| format!(" ({} %)", percent_size(percent)));
-            format!("{title} is {} mm{percent} {direction} at {place}", size(shift.median.value))
+            format!("{title} is {}{percent} {direction} at {place}", size_and_unit(units, shift.median.value))
         }
     };
-    format!("{what}; {}", against_spread(findings, measure, "the shift"))
+    format!("{what}; {}", against_spread(findings, measure, "the shift", units))
 }
 
 /// `Half of the melt comes 12 days and melt-out 15 days earlier at +2 °C; ...`.
@@ -52,13 +58,13 @@ pub(super) fn of_dates(
     findings: &Findings,
     half: Option<&MeasureFindings>,
     out: Option<&MeasureFindings>,
-    starts: WaterYearStart,
+    setting: &Setting<'_>,
 ) -> Option<String> {
     let leading = half.or(out)?;
     let Some(at) = spoken_of(findings, leading) else {
         let date = |measure: &MeasureFindings| {
             let day = measure.levels.get(findings.reference)?.periods.q50.value()?;
-            Some(day_of_month(starts, day))
+            Some(day_of_month(setting.water_year_starts, day))
         };
         return Some(match date(leading) {
             Some(date) => {
@@ -68,7 +74,7 @@ pub(super) fn of_dates(
             None => "Melt has no date at the reference; no other level was run".to_owned(),
         });
     };
-    let place = level(leading.levels.get(at)?.level_c);
+    let place = level(setting.units, leading.levels.get(at)?.level_c);
     let days = |measure: Option<&MeasureFindings>| {
         let measure = measure?;
         let level = measure.levels.get(at)?;
@@ -84,7 +90,7 @@ pub(super) fn of_dates(
         (None, None) => "The median realization has no melt dates to compare".to_owned(),
     };
     let subject = if half.is_some() { "the shift of half the melt" } else { "the shift" };
-    Some(format!("{what} at {place}; {}", against_spread(findings, leading, subject)))
+    Some(format!("{what} at {place}; {}", against_spread(findings, leading, subject, setting.units)))
 }
 
 /// Both shifts, the direction once where it is the same.
@@ -101,12 +107,17 @@ fn both_in_words(half: f64, out: f64) -> String {
     }
 }
 
-fn against_spread(findings: &Findings, measure: &MeasureFindings, subject: &str) -> String {
+fn against_spread(
+    findings: &Findings,
+    measure: &MeasureFindings,
+    subject: &str,
+    units: UnitSystem,
+) -> String {
     match measure.outweighs {
         Crossing::At { level_c, until_c } => {
-            let until =
-                until_c.map_or_else(|| "on".to_owned(), |until_c| format!("to {}", between_levels(until_c)));
-            let from = between_levels(level_c);
+            let until = until_c
+                .map_or_else(|| "on".to_owned(), |until_c| format!("to {}", between_levels(units, until_c)));
+            let from = between_levels(units, level_c);
             let first_warmer_c = findings.levels_c.get(findings.reference + 1);
             if first_warmer_c.is_some_and(|warmer_c| *warmer_c < level_c) {
                 format!("only from {from} {until} does {subject} outweigh the precipitation spread")
@@ -115,7 +126,7 @@ fn against_spread(findings: &Findings, measure: &MeasureFindings, subject: &str)
             }
         }
         Crossing::NotReached { up_to_c } => {
-            format!("up to {}, {subject} does not outweigh the precipitation spread", level(up_to_c))
+            format!("up to {}, {subject} does not outweigh the precipitation spread", level(units, up_to_c))
         }
         Crossing::Unknown if findings.reference + 1 == measure.levels.len() => {
             "no warmer level was run".to_owned()

@@ -1,29 +1,42 @@
 //! Numbers as figures write them: rounded to what a reader can use, with their unit and a true minus sign.
 
 use crate::calendar::{MONTHS, WaterYearStart};
+use crate::units::UnitSystem;
 use chrono::{Datelike, NaiveDate, TimeDelta};
 
 const MINUS: &str = "\u{2212}";
 const THIN_SPACE: char = '\u{2009}';
 
-/// `12 000`, `112`, `4.3`, `0.30`: an amount without its sign, to a tenth below 10 and a hundredth below 1.
-pub(super) fn size(amount: f64) -> String {
-    let decimals = match amount.abs() {
-        ..0.995 if amount != 0.0 => 2,
-        ..9.95 if amount != 0.0 => 1,
-        _ => 0,
+/// `12 000`, `112`, `4.3`, `0.30`: an amount of water without its sign and unit, to a tenth below 10 mm and a hundredth
+/// below 1 mm; to a tenth of an inch and a hundredth below 1 in.
+pub(super) fn size(units: UnitSystem, amount_mm: f64) -> String {
+    let amount = units.depth().of(amount_mm).abs();
+    let decimals = match (units, amount) {
+        (_, 0.0) => 0,
+        (_, ..0.995) => 2,
+        (UnitSystem::Metric, 9.95..) => 0,
+        _ => 1,
     };
-    grouped(amount.abs(), decimals)
+    grouped(amount, decimals)
+}
+
+/// `112 mm`: the same with its unit.
+pub(super) fn size_and_unit(units: UnitSystem, amount_mm: f64) -> String {
+    format!("{} {}", size(units, amount_mm), units.depth().word)
 }
 
 /// Whether [`size`] writes it as nothing.
-pub(super) fn is_nothing(amount: f64) -> bool {
-    amount.abs() < 0.005
+pub(super) fn is_nothing(units: UnitSystem, amount_mm: f64) -> bool {
+    units.depth().of(amount_mm).abs() < 0.005
 }
 
-/// `+12`, `−112`, `0`.
-pub(super) fn signed(amount: f64) -> String {
-    if is_nothing(amount) { "0".to_owned() } else { format!("{}{}", sign(amount), size(amount)) }
+/// `+12`, `−112`, `0`: a change of an amount of water without its unit.
+pub(super) fn signed(units: UnitSystem, change_mm: f64) -> String {
+    if is_nothing(units, change_mm) {
+        "0".to_owned()
+    } else {
+        format!("{}{}", sign(change_mm), size(units, change_mm))
+    }
 }
 
 /// `−27 %`, `+2.3 %`.
@@ -41,16 +54,22 @@ pub(super) fn percent_size(percent: f64) -> String {
     }
 }
 
-/// `+2 °C`, `−0.5 °C`, `0 °C`.
-pub(super) fn level(level_c: f64) -> String {
-    let text = grouped(level_c.abs(), 2);
-    let text = text.trim_end_matches('0').trim_end_matches('.');
-    if text.is_empty() || text == "0" { "0 °C".to_owned() } else { format!("{}{text} °C", sign(level_c)) }
+/// `+2 °C`, `−0.9 °F`, `0 °C`: a warming level.
+pub(super) fn level(units: UnitSystem, level_c: f64) -> String {
+    warming(units, level_c, 100.0)
 }
 
 /// `+1.4 °C`: a warming between levels, to a tenth.
-pub(super) fn between_levels(level_c: f64) -> String {
-    level((level_c * 10.0).round() / 10.0)
+pub(super) fn between_levels(units: UnitSystem, warming_c: f64) -> String {
+    warming(units, warming_c, 10.0)
+}
+
+/// A warming rounded to so many parts of a degree, halves away from zero.
+fn warming(units: UnitSystem, warming_c: f64, parts: f64) -> String {
+    let unit = units.warming();
+    let size = (unit.of(warming_c).abs() * parts).round() / parts;
+    let sign = if size == 0.0 { "" } else { sign(warming_c) };
+    format!("{sign}{size} {}", unit.word)
 }
 
 /// `1.6 ×`.
@@ -129,20 +148,27 @@ mod tests {
 
     #[test]
     fn amounts_are_rounded_to_what_a_reader_can_use() {
-        let written = [12_000.4, 112.4, 9.96, 9.94, 1.04, 0.996, 0.3, 0.0].map(size);
+        let mm = UnitSystem::Metric;
+        let written = [12_000.4, 112.4, 9.96, 9.94, 1.04, 0.996, 0.3, 0.0].map(|amount| size(mm, amount));
         assert_eq!(written, ["12\u{2009}000", "112", "10", "9.9", "1.0", "1.0", "0.30", "0"]);
-        assert_eq!(signed(-112.4), "−112");
-        assert_eq!(signed(-0.001), "0");
+        assert_eq!(signed(mm, -112.4), "−112");
+        assert_eq!(signed(mm, -0.001), "0");
+        let written = [30_480.0, 254.0, 25.4, 12.7, 0.0].map(|amount| size(UnitSystem::Us, amount));
+        assert_eq!(written, ["1\u{2009}200.0", "10.0", "1.0", "0.50", "0"]);
+        assert_eq!([-127.0, 0.1].map(|change| signed(UnitSystem::Us, change)), ["−5.0", "0"]);
         assert_eq!([-26.6, 2.31, -0.01].map(signed_percent), ["−27 %", "+2.3 %", "0 %"]);
     }
 
     #[test]
     fn levels_show_the_digits_they_have() {
+        let [metric, us] = [UnitSystem::Metric, UnitSystem::Us];
         assert_eq!(
-            [2.0, -0.5, 0.0, 1.25, 10.0].map(level),
-            ["+2 °C", "−0.5 °C", "0 °C", "+1.25 °C", "+10 °C"]
+            [2.0, -0.5, 0.0, 1.25, 10.0, 0.59819, -1.125].map(|c| level(metric, c)),
+            ["+2 °C", "−0.5 °C", "0 °C", "+1.25 °C", "+10 °C", "+0.6 °C", "−1.13 °C"]
         );
-        assert_eq!(between_levels(1.4499), "+1.4 °C");
+        assert_eq!([2.0, -0.5, 0.0, 0.25].map(|c| level(us, c)), ["+3.6 °F", "−0.9 °F", "0 °F", "+0.45 °F"]);
+        assert_eq!([1.4499, 1.25, 0.04].map(|c| between_levels(metric, c)), ["+1.4 °C", "+1.3 °C", "0 °C"]);
+        assert_eq!(between_levels(us, 1.4499), "+2.6 °F");
         assert_eq!([0.04, 1.55, 123.4].map(times), ["0.0 ×", "1.6 ×", "123 ×"]);
     }
 

@@ -26,15 +26,13 @@ const AXIS_PX: f64 = 40.0;
 fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let find = |name| findings.basin.iter().find(|found| found.measure.name == name);
     let (half, out) = (find("melt_d50_day"), find("melt_out_day"));
-    let title = headline::of_dates(findings, half, out, setting.water_year_starts)?;
+    let title = headline::of_dates(findings, half, out, setting)?;
     let shown: Vec<(&MeasureFindings, Form)> =
         [half.zip(Some(Form::Round)), out.zip(Some(Form::Diamond))].into_iter().flatten().collect();
     let measures: Vec<&MeasureFindings> = shown.iter().map(|(measure, _)| *measure).collect();
-    let words = Words::of(findings, &measures, setting.water_year_starts);
-    let panels: Vec<Panel<'_>> = shown
-        .into_iter()
-        .map(|(measure, form)| Panel::new(findings, measure, form, setting.water_year_starts))
-        .collect();
+    let words = Words::of(findings, &measures, setting);
+    let panels: Vec<Panel<'_>> =
+        shown.into_iter().map(|(measure, form)| Panel::new(findings, measure, form, setting)).collect();
     let text = paint(findings, &panels, setting, &title, &words).ok()?;
     Some(Svg { text, alt: format!("{title}. {}", words.kind_of_drawing), caption: words.caption, title })
 }
@@ -49,7 +47,7 @@ fn paint(
     let heading = Paragraphs::heading(setting.study_title, title, &words.ensemble);
     let key = Paragraphs::key(&words.key);
     let widest = |widths: Vec<f64>| widths.into_iter().fold(0.0, f64::max);
-    let left = MARGIN_PX + widest(panels.iter().map(|panel| panel.name_width(findings)).collect()) + 16.0;
+    let left = MARGIN_PX + widest(panels.iter().map(Panel::name_width).collect()) + 16.0;
     let right = WIDTH_PX - MARGIN_PX - widest(panels.iter().map(Panel::label_width).collect()) - 16.0;
     let calendar = Calendar::around(days_drawn(panels), LEAST_DAYS, setting.water_year_starts);
     let top = MARGIN_PX + heading.height() + 26.0;

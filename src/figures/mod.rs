@@ -25,6 +25,7 @@ pub use text_width::text_width;
 
 use crate::calendar::WaterYearStart;
 use crate::findings::Findings;
+use crate::units::UnitSystem;
 
 /// A figure.
 #[derive(Debug, Clone, Copy)]
@@ -45,6 +46,8 @@ pub const FIGURES: [Figure; 2] = [swe_by_level::FIGURE, melt_timing::FIGURE];
 pub struct Setting<'a> {
     /// Title of the study.
     pub study_title: &'a str,
+    /// Units that its reader asked for.
+    pub units: UnitSystem,
     /// First day of its water years.
     pub water_year_starts: WaterYearStart,
 }

@@ -11,6 +11,7 @@ use super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
 use super::theme::{BAND, EDGE, INK, LABEL, MARGIN_PX, NAME, NOTE, WIDTH_PX, level_ink};
 use super::{Figure, Setting, Svg};
 use crate::findings::{DOTS, Distribution, Findings, LevelFindings, MeasureFindings, Spread};
+use crate::units::{Unit, UnitSystem};
 use columns::{BESIDE_POINT_PX, Columns};
 use words::Words;
 
@@ -29,8 +30,8 @@ const BAND_LABEL_PX: f64 = 146.0;
 fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let measure = findings.basin.first()?;
     measure.levels.get(findings.reference)?;
-    let title = headline::of_amount(findings, measure);
-    let words = Words::of(findings, measure);
+    let title = headline::of_amount(findings, measure, setting.units);
+    let words = Words::of(findings, measure, setting.units);
     let text = paint(findings, measure, setting, &title, &words).ok()?;
     Some(Svg { text, alt: format!("{title}. {}", words.kind_of_drawing), caption: words.caption, title })
 }
@@ -44,24 +45,26 @@ fn paint(
 ) -> Drawn<String> {
     let heading = Paragraphs::heading(setting.study_title, title, &words.ensemble);
     let key = Paragraphs::key(&words.key);
-    let ticks = AmountTicks::up_to(highest(measure), STEPS);
+    let depth = setting.units.depth();
+    let ticks = AmountTicks::up_to(depth.of(highest(measure)), STEPS);
     let tick_width = ticks.ticks.iter().map(|(_, label)| LABEL.width(label)).fold(0.0, f64::max);
     let left = MARGIN_PX + tick_width + 14.0;
     let right = WIDTH_PX - MARGIN_PX - BAND_LABEL_PX;
     let columns = Columns::new(&findings.levels_c, left, right);
-    let labels = columns.labels(findings, measure);
+    let labels = columns.labels(findings, measure, setting.units);
     let top = MARGIN_PX + heading.height() + 46.0;
     let bottom = top + PLOT_PX;
     let below = bottom + 12.0 + labels.height() + 22.0;
     let sheet = Sheet::new(below + key.height() + MARGIN_PX)?;
     let plot = sheet.plot((left, top), (right, bottom), 0.0..right - left, 0.0..ticks.top())?;
+    let scale = Scale { plot, depth };
 
     heading.write(&sheet, MARGIN_PX)?;
     if let Some(spread) = &measure.precipitation_spread {
-        sheet.group("reference-band", || band(&sheet, &plot, spread, [left, right]))?;
+        sheet.group("reference-band", || band(&sheet, &scale, spread, setting.units, [left, right]))?;
     }
-    sheet.group("axis", || axis(&sheet, &plot, &ticks, &words.axis, [left, right]))?;
-    let heights = dot_heights(measure, &plot);
+    sheet.group("axis", || axis(&sheet, &scale.plot, &ticks, &words.axis, [left, right]))?;
+    let heights = dot_heights(measure, &scale);
     let room = columns.room();
     let size = DotSize::for_all(&heights, room);
     let reach = match size.widest(&heights, room) {
@@ -77,7 +80,7 @@ fn paint(
         let point = columns.centre(at) - reach;
         sheet.group("level", || {
             dots(&sheet, heights, size, [point + BESIDE_POINT_PX, room], marking)?;
-            intervals(&sheet, &plot, &level.periods, point, marking)
+            intervals(&sheet, &scale, &level.periods, point, marking)
         })?;
     }
     sheet.group("levels", || labels.write(&sheet, &columns, bottom + 12.0))?;
@@ -85,7 +88,20 @@ fn paint(
     Ok(sheet.document(FIGURE.slug, title, &words.description))
 }
 
-/// The highest amount that is drawn.
+/// Where amounts stand: the plot counts in the reader's unit, so that its ticks are round there.
+struct Scale {
+    plot: Plot,
+    depth: Unit,
+}
+
+impl Scale {
+    /// Height of an amount of water on the sheet, px.
+    fn at(&self, amount_mm: f64) -> f64 {
+        self.plot.at(0.0, self.depth.of(amount_mm)).1
+    }
+}
+
+/// The highest amount that is drawn, mm.
 fn highest(measure: &MeasureFindings) -> f64 {
     let drawn = measure.levels.iter().flat_map(|level| {
         let dots = level.periods.dots.iter().filter(|_| level.periods.count >= DOTS);
@@ -95,8 +111,8 @@ fn highest(measure: &MeasureFindings) -> f64 {
 }
 
 /// The reference's spread across the whole width, named at its right.
-fn band(sheet: &Sheet, plot: &Plot, spread: &Spread, [left, right]: [f64; 2]) -> Drawn {
-    let [low, middle, high] = [spread.q05, spread.q50, spread.q95].map(|amount| plot.at(0.0, amount).1);
+fn band(sheet: &Sheet, scale: &Scale, spread: &Spread, units: UnitSystem, [left, right]: [f64; 2]) -> Drawn {
+    let [low, middle, high] = [spread.q05, spread.q50, spread.q95].map(|amount_mm| scale.at(amount_mm));
     sheet.block((left, high), (right, low), BAND)?;
     for edge in [low, high] {
         sheet.line(&[(left, edge), (right, edge)], Stroke::solid(EDGE, 1.0))?;
@@ -105,8 +121,8 @@ fn band(sheet: &Sheet, plot: &Plot, spread: &Spread, [left, right]: [f64; 2]) ->
     sheet.line(&[(left, middle), (right, middle)], median)?;
     let bracket = [(right + 4.0, high), (right + 9.0, high), (right + 9.0, low), (right + 4.0, low)];
     sheet.line(&bracket, Stroke::solid(EDGE, 1.0))?;
-    let lines = words::of_band(spread);
-    let floor = plot.at(0.0, 0.0).1;
+    let lines = words::of_band(spread, units);
+    let floor = scale.at(0.0);
     let leading = NOTE.leading();
     let height = leading * lines.len() as f64;
     let start = ((high + low) / 2.0 - height / 2.0).min(floor - height);
@@ -131,17 +147,17 @@ fn axis(sheet: &Sheet, plot: &Plot, ticks: &AmountTicks, name: &str, [left, righ
 }
 
 /// Heights of the dots of every level; none where there are fewer realizations than dots.
-fn dot_heights(measure: &MeasureFindings, plot: &Plot) -> Vec<Vec<f64>> {
+fn dot_heights(measure: &MeasureFindings, scale: &Scale) -> Vec<Vec<f64>> {
     let heights = |level: &LevelFindings| {
         let dots = level.periods.dots.iter().filter(|_| level.periods.count >= DOTS);
-        dots.filter_map(|dot| dot.value()).map(|amount| plot.at(0.0, amount).1).collect()
+        dots.filter_map(|dot| dot.value()).map(|amount_mm| scale.at(amount_mm)).collect()
     };
     measure.levels.iter().map(heights).collect()
 }
 
 /// Point and intervals at the left of a column.
-fn intervals(sheet: &Sheet, plot: &Plot, periods: &Distribution, x: f64, marking: Marking) -> Drawn {
+fn intervals(sheet: &Sheet, scale: &Scale, periods: &Distribution, x: f64, marking: Marking) -> Drawn {
     let quantiles = [periods.q05, periods.q25, periods.q50, periods.q75, periods.q95];
-    let places = quantiles.map(|quantile| quantile.value().map(|amount| (x, plot.at(0.0, amount).1)));
+    let places = quantiles.map(|quantile| quantile.value().map(|amount_mm| (x, scale.at(amount_mm))));
     point_interval(sheet, places, marking)
 }

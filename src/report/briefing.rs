@@ -49,9 +49,9 @@ pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg]) -> Vec
                     (levels::section(study))
                     (record::section(study))
                     (assumed::section(study))
-                    (list_section("Cautions", &cautions::CAUTIONS))
+                    (list_section("Cautions", &cautions::cautions(study.reader)))
                     h2 { "Terms" }
-                    dl { @for (term, meaning) in terms::TERMS { dt { (term) } dd { (meaning) } } }
+                    dl { @for (term, meaning) in terms::terms(study.reader) { dt { (term) } dd { (meaning) } } }
                     (repeat_section(study))
                 }
             }
@@ -60,7 +60,7 @@ pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg]) -> Vec
     page.into_string().into_bytes()
 }
 
-fn list_section(title: &str, sentences: &[&str]) -> Markup {
+fn list_section(title: &str, sentences: &[String]) -> Markup {
     html! { h2 { (title) } ul { @for sentence in sentences { li { (sentence) } } } }
 }
 

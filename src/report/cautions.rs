@@ -1,7 +1,21 @@
 //! What a reader must know before using a number. The first ones matter most.
 
-/// Cautions, in order of weight.
-pub const CAUTIONS: [&str; 9] = [
+use super::numbers::fixed;
+use super::reader::Reader;
+
+/// Cautions in a reader's units, in order of weight.
+pub(super) fn cautions(reader: Reader) -> [String; 9] {
+    let unit = reader.units.temperature();
+    let [low, high] = [1.0, 3.0].map(|c| fixed(unit.of(c), 0));
+    let humidity = format!(
+        "Rain and snow are told apart by air temperature; humidity matters between about {low} and {high} {}.",
+        unit.word
+    );
+    let claim = format!(
+        "'In this model, {} makes' is what these numbers say; never that warming caused what a year brought.",
+        reader.level(2.0)
+    );
+    [
     "A planning aid. Not for flood forecasting, flood design, the operation or the safety of dams: local codes, \
      water-control manuals and licensed practice rule.",
     "What if, not forecast: no warming level has a date or a likelihood here.",
@@ -10,9 +24,11 @@ pub const CAUTIONS: [&str; 9] = [
      and factors change with cloud, albedo and season; no direction of the error is claimed.",
     "Warming is added evenly to every day and band: storms, wet days, and the link of temperature and precipitation stay \
      those of the record, inversions and warming that grows with elevation are left out.",
-    "Rain and snow are told apart by air temperature; humidity matters between about 1 and 3 °C.",
+    &humidity,
     "Not represented: wind drift, forest interception, sublimation, fire, dust, glaciers, soil, groundwater, \
      evaporation. Snowpack outflow and water input are water leaving the snow and reaching the ground, not streamflow.",
     "Resampled years cannot hold a drought longer, or a storm larger, than the record's years can be put together to.",
-    "'In this model, +2 °C makes' is what these numbers say; never that warming caused what a year brought.",
-];
+    &claim,
+]
+.map(str::to_owned)
+}

@@ -5,6 +5,7 @@ mod cautions;
 mod daily;
 pub mod numbers;
 mod publish;
+mod reader;
 mod study;
 mod summary;
 mod tables;
@@ -12,9 +13,9 @@ mod terms;
 mod words;
 
 pub use briefing::briefing_html;
-pub use cautions::CAUTIONS;
 pub use daily::{DailyError, daily_csv};
 pub use publish::{PublishError, may_replace, publish};
+pub use reader::Reader;
 pub use study::{Input, Origin, Record, Study};
 pub use summary::{daily_manifest_json, manifest_json, summary_json};
 pub use tables::{ReportFile, tables};

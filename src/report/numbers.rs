@@ -1,7 +1,6 @@
 //! Numbers as people read them: rounded to what they can bear, with a true minus, dates by name.
 
 use crate::calendar::{MONTHS, WaterYearStart, date_of};
-use crate::season::{Kind, Outcome};
 use chrono::Datelike;
 
 /// The word for a number that is not there.
@@ -31,25 +30,9 @@ pub fn signed(value: f64, decimals: usize) -> String {
     if value > 0.0 && !is_zero { format!("+{text}") } else { text }
 }
 
-/// Decimals of an amount of water: whole mm, tenths below 10 mm.
-pub fn amount_decimals(value_mm: f64) -> usize {
-    usize::from(value_mm.abs() < 9.95)
-}
-
-/// `412 mm`.
-pub fn amount(value_mm: f64) -> String {
-    format!("{} mm", fixed(value_mm, amount_decimals(value_mm)))
-}
-
-/// `−1 °C`, `1.5 °C`; the decimals that the temperature has.
-pub fn degrees(temperature_c: f64) -> String {
-    level(temperature_c).replace('+', "")
-}
-
-/// `+2 °C`; the decimals that the level has.
-pub fn level(level_c: f64) -> String {
-    let decimals = (0..3).find(|d| format!("{level_c:.*}", *d).parse() == Ok(level_c)).unwrap_or(3);
-    format!("{} °C", signed(level_c, decimals))
+/// The number without zeros at the end of its decimals: `3.60` as `3.6`, `2.00` as `2`.
+pub fn trimmed(number: &str) -> &str {
+    if number.contains('.') { number.trim_end_matches('0').trim_end_matches('.') } else { number }
 }
 
 /// `14 May`: the date of a day of the water year in a year of 365 days, to the nearest whole day.
@@ -75,16 +58,6 @@ pub fn days_moved(days: f64) -> String {
     }
 }
 
-/// A measure's value in words.
-pub fn outcome(outcome: Outcome, kind: Kind, starts: WaterYearStart) -> String {
-    match (outcome, kind) {
-        (Outcome::Value(value), Kind::AmountMm) => amount(value),
-        (Outcome::Value(value), Kind::DayOfWaterYear) => date(value, starts),
-        (Outcome::None, _) => "none".to_owned(),
-        (Outcome::NotGone, _) => "not gone".to_owned(),
-    }
-}
-
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -96,8 +69,7 @@ mod tests {
         assert_eq!(fixed(-12_345.6, 0), "−12\u{2009}346");
         assert_eq!(signed(0.0, 0), "0");
         assert_eq!(signed(-6.5, 0), "−7", "as days_moved rounds");
-        assert_eq!(level(1.5), "+1.5 °C");
-        assert_eq!(level(-2.0), "−2 °C");
+        assert_eq!(["3.60", "+2.00", "10", "0.0"].map(trimmed), ["3.6", "+2", "10", "0"]);
         assert_eq!(days_moved(-0.6), "1 day earlier");
         let october = WaterYearStart(MonthDay::new(10, 1).unwrap());
         assert_eq!(date(183.0, october), "1 April");

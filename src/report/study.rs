@@ -1,7 +1,7 @@
 //! Everything a report is made of, gathered by the command that ran the study.
 
+use super::reader::Reader;
 use crate::basin::Basin;
-use crate::calendar::WaterYearStart;
 use crate::ensemble::RecordYear;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
@@ -15,6 +15,8 @@ use serde::Serialize;
 pub struct Study<'a> {
     /// Its title.
     pub title: &'a str,
+    /// Who reads it.
+    pub reader: Reader,
     /// The basin.
     pub basin: &'a Basin,
     /// Elevation of the station, m.
@@ -90,11 +92,4 @@ pub struct Input {
     pub path: String,
     /// SHA-256 of its bytes.
     pub sha256: String,
-}
-
-impl Study<'_> {
-    /// The start of the water year.
-    pub fn starts(&self) -> WaterYearStart {
-        self.season.water_year_starts
-    }
 }

@@ -8,6 +8,7 @@ use crate::findings::Findings;
 use crate::perturb::Warming;
 use crate::season::{Outcome, SeasonSettings};
 use crate::snow::{GaugeMultiplier, SnowParams};
+use crate::units::UnitSystem;
 use crate::weather::{Counts, SkippedYear};
 use serde::Serialize;
 
@@ -16,12 +17,20 @@ struct Summary<'a> {
     schema_version: u32,
     program: &'static str,
     title: &'a str,
+    units: UnitsSaid,
     answer: &'a Answer,
     quantiles: &'static str,
     season: &'a SeasonSettings,
     basin: BasinSummary,
     record: RecordSummary<'a>,
     findings: &'a Findings,
+}
+
+/// In which units the document's numbers stand, and in which its words and the rest of the report.
+#[derive(Serialize)]
+struct UnitsSaid {
+    numbers: UnitSystem,
+    words_figures_and_tables: UnitSystem,
 }
 
 #[derive(Serialize)]
@@ -68,6 +77,7 @@ pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Ve
         schema_version: SCHEMA_VERSION,
         program: "thawline",
         title: study.title,
+        units: UnitsSaid { numbers: UnitSystem::Metric, words_figures_and_tables: study.reader.units },
         answer,
         quantiles: "Hyndman & Fan (1996) type 8; amounts in mm, dates as day of the water year counted from 1",
         season: study.season,
@@ -123,6 +133,7 @@ struct Parameters<'a> {
     reference_c: f64,
     warming: &'a Warming,
     realizations: Realizations,
+    report_units: UnitSystem,
 }
 
 #[derive(Serialize)]
@@ -188,6 +199,7 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
                 mean_run_years: study.mean_run_years,
                 mean_change_sd_pct: study.mean_change_sd_pct,
             },
+            report_units: study.reader.units,
         },
         defaults_in_force: study.defaults.iter().map(|(key, value)| Default { key, value }).collect(),
         unlikely: unlikely.iter().map(|(about, why)| Notice { about, why }).collect(),

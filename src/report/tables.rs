@@ -3,6 +3,7 @@
 use super::study::Study;
 use crate::findings::{Chance, Distribution, Estimate, LevelFindings, MeasureFindings};
 use crate::season::{Kind, Measure, Outcome};
+use crate::units::UnitSystem;
 use csv::Writer;
 
 /// A file of a report: path within the results and content.
@@ -18,10 +19,16 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
             .flat_map(|(number, band)| band.measures.iter().map(move |m| (Some((number + 1, &band.band)), m)))
     };
     vec![
-        ("tables/basin-amounts.csv".to_owned(), table(basin().collect(), Kind::AmountMm)),
-        ("tables/basin-dates.csv".to_owned(), table(basin().collect(), Kind::DayOfWaterYear)),
-        ("tables/bands-amounts.csv".to_owned(), table(bands().collect(), Kind::AmountMm)),
-        ("tables/bands-dates.csv".to_owned(), table(bands().collect(), Kind::DayOfWaterYear)),
+        ("tables/basin-amounts.csv".to_owned(), table(basin().collect(), study.reader.units, Kind::AmountMm)),
+        (
+            "tables/basin-dates.csv".to_owned(),
+            table(basin().collect(), study.reader.units, Kind::DayOfWaterYear),
+        ),
+        ("tables/bands-amounts.csv".to_owned(), table(bands().collect(), study.reader.units, Kind::AmountMm)),
+        (
+            "tables/bands-dates.csv".to_owned(),
+            table(bands().collect(), study.reader.units, Kind::DayOfWaterYear),
+        ),
         ("tables/record-years.csv".to_owned(), record_years(study)),
     ]
 }
@@ -29,21 +36,25 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
 type Place<'a> = Option<(usize, &'a crate::basin::Band)>;
 
 /// One row a place, measure and level.
-fn table(rows: Vec<(Place<'_>, &MeasureFindings)>, kind: Kind) -> Vec<u8> {
+fn table(rows: Vec<(Place<'_>, &MeasureFindings)>, units: UnitSystem, kind: Kind) -> Vec<u8> {
     let (unit, change_unit) = match kind {
-        Kind::AmountMm => ("mm", "mm"),
+        Kind::AmountMm => (units.depth().suffix, units.depth().suffix),
         Kind::DayOfWaterYear => ("day_of_water_year", "days"),
     };
     let has_bands = rows.iter().any(|(place, _)| place.is_some());
     let mut writer = Writer::from_writer(Vec::new());
     let mut header: Vec<String> = Vec::new();
     if has_bands {
-        header.extend(["band", "lower_m", "upper_m", "area_km2"].map(str::to_owned));
+        let (length, area) = (units.elevation().suffix, units.area().suffix);
+        header.extend([
+            "band".to_owned(),
+            format!("lower_{length}"),
+            format!("upper_{length}"),
+            format!("area_{area}"),
+        ]);
     }
-    header.extend(
-        ["measure", "level_degC", "realizations", "realizations_none", "realizations_not_gone"]
-            .map(str::to_owned),
-    );
+    header.extend(["measure".to_owned(), format!("level_{}", units.warming().suffix)]);
+    header.extend(["realizations", "realizations_none", "realizations_not_gone"].map(str::to_owned));
     header.extend(["q05", "q25", "q50", "q75", "q95"].map(|q| format!("{q}_{unit}")));
     header.push(format!("shift_{change_unit}"));
     header.push(format!("shift_monte_carlo_error_{change_unit}"));
@@ -74,31 +85,36 @@ fn table(rows: Vec<(Place<'_>, &MeasureFindings)>, kind: Kind) -> Vec<u8> {
     write(&mut writer, &header);
     for (place, measure) in rows.into_iter().filter(|(_, measure)| measure.measure.kind == kind) {
         for level in &measure.levels {
-            write(&mut writer, &row(place, &measure.measure, level, kind));
+            write(&mut writer, &row(place, &measure.measure, level, units));
         }
     }
     finish(writer)
 }
 
-fn row(place: Place<'_>, measure: &Measure, level: &LevelFindings, kind: Kind) -> Vec<String> {
+fn row(place: Place<'_>, measure: &Measure, level: &LevelFindings, units: UnitSystem) -> Vec<String> {
+    let told = Told { units, kind: measure.kind };
     let mut row = Vec::new();
     if let Some((number, band)) = place {
         row.push(number.to_string());
-        row.extend([band.lower_m, band.upper_m, band.area_km2].map(|number| number.to_string()));
+        row.extend([band.lower_m, band.upper_m].map(|edge_m| units.elevation().of(edge_m).to_string()));
+        row.push(units.area().of(band.area_km2).to_string());
     }
-    row.extend([measure.name.clone(), level.level_c.to_string()]);
+    row.extend([name(measure, units), units.warming().of(level.level_c).to_string()]);
     row.extend(
         [level.periods.count, level.periods.none, level.periods.not_gone].map(|count| count.to_string()),
     );
-    row.extend(quantiles(&level.periods));
+    row.extend(told.quantiles(&level.periods));
     let shift = level.shift;
-    row.extend(estimate(shift.map(|shift| shift.median)));
-    row.extend([shift.map(|shift| shift.q05), shift.map(|shift| shift.q95)].map(optional));
+    let median = shift.map(|shift| shift.median);
+    let error = median.and_then(|median| median.monte_carlo_error);
+    let range = [shift.map(|shift| shift.q05), shift.map(|shift| shift.q95)];
+    row.extend([median.map(|median| median.value), error].map(|number| told.change(number)));
+    row.extend(range.map(|number| told.change(number)));
     row.extend(
         [shift.map(|shift| shift.pairs), shift.map(|shift| shift.pairs_without_value)]
             .map(|count| count.map_or(String::new(), |count| count.to_string())),
     );
-    if kind == Kind::AmountMm {
+    if measure.kind == Kind::AmountMm {
         row.push(optional(level.percent_change));
     }
     row.extend(estimate(level.signal_to_spread));
@@ -106,7 +122,7 @@ fn row(place: Place<'_>, measure: &Measure, level: &LevelFindings, kind: Kind) -
     row.push(optional(level.signal_to_noise.and_then(|ratio| ratio.paired)));
     row.extend(level.years_undefined.map(|count| count.to_string()));
     if let Some(single_years) = &level.single_years {
-        row.extend(quantiles(single_years));
+        row.extend(told.quantiles(single_years));
         let chances = level.chances;
         row.extend(chance(chances.and_then(|chances| chances.period_below_reference)));
         row.extend(chance(chances.and_then(|chances| chances.year_below_reference)));
@@ -117,22 +133,25 @@ fn row(place: Place<'_>, measure: &Measure, level: &LevelFindings, kind: Kind) -
 
 /// The record's years: used or left out, why, and what they measure at the reference.
 fn record_years(study: &Study<'_>) -> Vec<u8> {
-    let record = &study.record;
+    let (record, units) = (&study.record, study.reader.units);
     let mut writer = Writer::from_writer(Vec::new());
     let mut header = vec!["water_year".to_owned(), "used".to_owned(), "why_left_out".to_owned()];
-    header.extend(record.measures.iter().map(|measure| measure.name.clone()));
+    header.extend(record.measures.iter().map(|measure| name(measure, units)));
     write(&mut writer, &header);
-    let mut rows: Vec<(i32, Vec<String>)> = record
-        .years
-        .iter()
-        .map(|year| {
-            let mut row = vec![year.water_year.to_string(), "yes".to_owned(), String::new()];
-            row.extend(year.values.iter().map(|value| worded(Outcome::from(*value))));
-            (year.water_year, row)
-        })
-        .collect();
+    let mut rows: Vec<(i32, Vec<String>)> =
+        record
+            .years
+            .iter()
+            .map(|year| {
+                let mut row = vec![year.water_year.to_string(), "yes".to_owned(), String::new()];
+                row.extend(record.measures.iter().zip(&year.values).map(|(measure, value)| {
+                    Told { units, kind: measure.kind }.outcome(Outcome::from(*value))
+                }));
+                (year.water_year, row)
+            })
+            .collect();
     rows.extend(record.skipped.iter().map(|year| {
-        let why: Vec<String> = year.why.iter().map(ToString::to_string).collect();
+        let why: Vec<String> = year.why.iter().map(|why| why.words(units)).collect();
         let mut row = vec![year.water_year.to_string(), "no".to_owned(), why.join("; ")];
         row.resize(3 + record.measures.len(), String::new());
         (year.water_year, row)
@@ -144,16 +163,45 @@ fn record_years(study: &Study<'_>) -> Vec<u8> {
     finish(writer)
 }
 
-fn quantiles(distribution: &Distribution) -> [String; 5] {
-    [distribution.q05, distribution.q25, distribution.q50, distribution.q75, distribution.q95].map(worded)
+/// The name of a measure with the unit in which it is told: `swe_04_01_in`.
+fn name(measure: &Measure, units: UnitSystem) -> String {
+    match (measure.kind, measure.name.strip_suffix("_mm")) {
+        (Kind::AmountMm, Some(name)) => format!("{name}_{}", units.depth().suffix),
+        _ => measure.name.clone(),
+    }
 }
 
-/// A number, or the words `none` and `not gone`.
-fn worded(outcome: Outcome) -> String {
-    match outcome {
-        Outcome::Value(value) => value.to_string(),
-        Outcome::None => "none".to_owned(),
-        Outcome::NotGone => "not gone".to_owned(),
+/// How a measure's values are told.
+#[derive(Clone, Copy)]
+struct Told {
+    units: UnitSystem,
+    kind: Kind,
+}
+
+impl Told {
+    fn number(self, value: f64) -> String {
+        match self.kind {
+            Kind::AmountMm => self.units.depth().of(value).to_string(),
+            Kind::DayOfWaterYear => value.to_string(),
+        }
+    }
+
+    /// A number, or the words `none` and `not gone`.
+    fn outcome(self, outcome: Outcome) -> String {
+        match outcome {
+            Outcome::Value(value) => self.number(value),
+            Outcome::None => "none".to_owned(),
+            Outcome::NotGone => "not gone".to_owned(),
+        }
+    }
+
+    fn change(self, change: Option<f64>) -> String {
+        change.map_or(String::new(), |change| self.number(change))
+    }
+
+    fn quantiles(self, distribution: &Distribution) -> [String; 5] {
+        [distribution.q05, distribution.q25, distribution.q50, distribution.q75, distribution.q95]
+            .map(|outcome| self.outcome(outcome))
     }
 }
 

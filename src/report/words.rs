@@ -1,6 +1,7 @@
 //! The answer in words. Every word hangs on a number of the findings and turns round when the number does.
 
-use super::numbers::{amount, amount_decimals, days_moved, fixed, level, signed};
+use super::numbers::{days_moved, fixed, signed};
+use super::reader::Reader;
 use crate::findings::{
     Chance, Crossing, CrossingRange, Findings, LEAST_REFERENCE_MM, LevelFindings, MeasureFindings,
 };
@@ -26,8 +27,8 @@ pub struct Answer {
     pub chances: Vec<String>,
 }
 
-/// Puts the findings into words. `mean_change_sd_pct` is the assumed change of mean precipitation, if any.
-pub fn answer_in_words(findings: &Findings, mean_change_sd_pct: Option<f64>) -> Answer {
+/// Puts the findings into a reader's words. `mean_change_sd_pct` is the assumed change of mean precipitation, if any.
+pub fn answer_in_words(findings: &Findings, mean_change_sd_pct: Option<f64>, reader: Reader) -> Answer {
     let Some(headline) = findings.basin.first() else {
         return Answer {
             verdict: "Nothing was measured.".to_owned(),
@@ -40,17 +41,26 @@ pub fn answer_in_words(findings: &Findings, mean_change_sd_pct: Option<f64>) -> 
     };
     let changed = |level: &&LevelFindings| level.shift.is_some();
     Answer {
-        verdict: verdict(findings, headline),
+        verdict: verdict(findings, headline, reader),
         amounts: headline
             .levels
             .iter()
             .filter(changed)
-            .map(|level| how_much(findings, headline, level))
+            .map(|level| how_much(findings, headline, level, reader))
             .collect(),
-        yardstick: yardstick(findings, headline, mean_change_sd_pct),
-        timing: findings.levels_c.iter().enumerate().filter_map(|(at, _)| timing(findings, at)).collect(),
-        elevation: elevation(findings),
-        chances: headline.levels.iter().filter_map(|level| could_be_hidden(findings, level)).collect(),
+        yardstick: yardstick(findings, headline, mean_change_sd_pct, reader),
+        timing: findings
+            .levels_c
+            .iter()
+            .enumerate()
+            .filter_map(|(at, _)| timing(findings, at, reader))
+            .collect(),
+        elevation: elevation(findings, reader),
+        chances: headline
+            .levels
+            .iter()
+            .filter_map(|level| could_be_hidden(findings, level, reader))
+            .collect(),
     }
 }
 
@@ -63,7 +73,7 @@ pub fn period_name(findings: &Findings, measure: &MeasureFindings) -> String {
     format!("{}-year {statistic} {}", findings.years, measure.measure.title)
 }
 
-fn verdict(findings: &Findings, headline: &MeasureFindings) -> String {
+fn verdict(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> String {
     let name = period_name(findings, headline);
     if let Some(spread) = headline.precipitation_spread
         && headline.measure.kind == Kind::AmountMm
@@ -72,17 +82,17 @@ fn verdict(findings: &Findings, headline: &MeasureFindings) -> String {
         return format!(
             "There is hardly any snow to lose: the reference's {name} is {} in the median. Check units, elevations and the \
              hemisphere if you know better.",
-            amount(spread.q50)
+            reader.amount(spread.q50)
         );
     }
     match headline.outweighs {
         Crossing::At { level_c, until_c } => {
-            let range = crossing_range(findings, headline.outweighs_range);
-            let from = signed(level_c, 1);
+            let range = crossing_range(findings, headline.outweighs_range, reader);
+            let from = reader.between_levels(level_c);
             let (span, elsewhere) = match until_c {
-                None => (format!("From about {from} °C of warming on{range}"), "up to there"),
+                None => (format!("From about {from} of warming on{range}"), "up to there"),
                 Some(until_c) => (
-                    format!("From about {from} °C{range} to {} °C of warming", signed(until_c, 1)),
+                    format!("From about {from}{range} to {} of warming", reader.between_levels(until_c)),
                     "elsewhere",
                 ),
             };
@@ -95,12 +105,12 @@ fn verdict(findings: &Findings, headline: &MeasureFindings) -> String {
             let ratio = headline.levels.last().and_then(|level| level.signal_to_spread);
             let ratio = ratio.map_or(String::new(), |ratio| {
                 let ratio = fixed(ratio.value, 2);
-                format!(": at {} the shift is {ratio} times the half spread", level(up_to_c))
+                format!(": at {} the shift is {ratio} times the half spread", reader.level(up_to_c))
             });
             format!(
                 "Up to {}, warming does not outweigh the precipitation spread of the {name}, precipitation outweighs the \
                  warming{ratio}.",
-                level(up_to_c)
+                reader.level(up_to_c)
             )
         }
         Crossing::Unknown => format!(
@@ -111,10 +121,12 @@ fn verdict(findings: &Findings, headline: &MeasureFindings) -> String {
 }
 
 /// ` (Monte Carlo range +1.3 to +1.5)`, where the realizations at hand leave that open.
-fn crossing_range(findings: &Findings, range: Option<CrossingRange>) -> String {
+fn crossing_range(findings: &Findings, range: Option<CrossingRange>, reader: Reader) -> String {
     let highest = findings.levels_c.last().copied().unwrap_or_default();
-    let words =
-        |end: Option<f64>| end.map_or(format!("above {}", signed(highest, 1)), |level_c| signed(level_c, 1));
+    let words = |end: Option<f64>| match end {
+        Some(level_c) => reader.between_levels_bare(level_c),
+        None => format!("above {}", reader.between_levels_bare(highest)),
+    };
     match range {
         Some(CrossingRange { q05_c, q95_c }) if words(q05_c) != words(q95_c) => {
             format!(" (Monte Carlo range {} to {})", words(q05_c), words(q95_c))
@@ -123,7 +135,7 @@ fn crossing_range(findings: &Findings, range: Option<CrossingRange>) -> String {
     }
 }
 
-fn how_much(findings: &Findings, headline: &MeasureFindings, at: &LevelFindings) -> String {
+fn how_much(findings: &Findings, headline: &MeasureFindings, at: &LevelFindings, reader: Reader) -> String {
     let Some(shift) = at.shift else {
         return String::new();
     };
@@ -131,7 +143,7 @@ fn how_much(findings: &Findings, headline: &MeasureFindings, at: &LevelFindings)
     let change = if change_mm == 0.0 {
         "does not change".to_owned()
     } else {
-        format!("{} by {}", if change_mm < 0.0 { "falls" } else { "rises" }, amount(change_mm.abs()))
+        format!("{} by {}", if change_mm < 0.0 { "falls" } else { "rises" }, reader.amount(change_mm.abs()))
     };
     let percent = at.percent_change.map_or(String::new(), |percent| format!(" ({} %)", signed(percent, 0)));
     let ratio = at.signal_to_spread.map_or(String::new(), |ratio| {
@@ -139,20 +151,15 @@ fn how_much(findings: &Findings, headline: &MeasureFindings, at: &LevelFindings)
         let word = if ratio.value > 1.0 { "outweighs" } else { "does not outweigh" };
         format!("; that is {}{error} times the half spread, so it {word} it", fixed(ratio.value, 2))
     });
-    let decimals = amount_decimals(shift.q05.abs().max(shift.q95.abs()));
     let range = if shift.pairs >= LEAST_PAIRS_FOR_A_RANGE {
-        format!(
-            ", 90 % of them between {} and {} mm",
-            signed(shift.q05, decimals),
-            signed(shift.q95, decimals)
-        )
+        format!(", 90 % of them between {}", reader.change_and_change(shift.q05, shift.q95))
     } else {
         String::new()
     };
     let realizations = if shift.pairs == 1 { "realization" } else { "realizations" };
     format!(
         "At {}, the {} {change}{percent}: the median over {} {realizations}, each against itself{range}{ratio}.",
-        level(at.level_c),
+        reader.level(at.level_c),
         period_name(findings, headline),
         shift.pairs,
     )
@@ -162,6 +169,7 @@ fn yardstick(
     findings: &Findings,
     headline: &MeasureFindings,
     mean_change_sd_pct: Option<f64>,
+    reader: Reader,
 ) -> Vec<String> {
     let mut words = Vec::new();
     if let Some(spread) = headline.precipitation_spread {
@@ -172,9 +180,9 @@ fn yardstick(
             period_name(findings, headline),
             findings.realizations,
             findings.years,
-            amount(spread.q50),
-            amount(spread.q05),
-            amount(spread.q95)
+            reader.amount(spread.q50),
+            reader.amount(spread.q05),
+            reader.amount(spread.q95)
         ));
     }
     if headline.precipitation_spread.is_none() {
@@ -198,7 +206,7 @@ fn yardstick(
             ((half_spread > 1.0) != (one_sd > 1.0)).then(|| {
                 format!(
                     "{} ({} half spreads, {} standard deviations)",
-                    level(at.level_c),
+                    reader.level(at.level_c),
                     fixed(half_spread, 2),
                     fixed(one_sd, 2)
                 )
@@ -228,7 +236,7 @@ fn yardstick(
     words
 }
 
-fn timing(findings: &Findings, at: usize) -> Option<String> {
+fn timing(findings: &Findings, at: usize, reader: Reader) -> Option<String> {
     let of = |name: &str| {
         let measure = findings.basin.iter().find(|measure| measure.measure.name == name)?;
         Some(days_moved(measure.levels[at].shift?.median.value))
@@ -237,13 +245,13 @@ fn timing(findings: &Findings, at: usize) -> Option<String> {
     let melt_out = melt_out.map_or(String::new(), |moved| format!(", melt-out comes {moved}"));
     Some(format!(
         "At {}, half of the net melt is done {half_melted}{melt_out}.",
-        level(findings.levels_c[at])
+        reader.level(findings.levels_c[at])
     ))
 }
 
 /// The bands that lose most and least of the headline measure, at the level nearest to 2 degC above the reference; bands
 /// whose reference median is below 10 mm have no percentage and are left out.
-fn elevation(findings: &Findings) -> Option<String> {
+fn elevation(findings: &Findings, reader: Reader) -> Option<String> {
     let warmer = findings.reference + 1..findings.levels_c.len();
     let at = warmer.min_by(|a, b| {
         let distance =
@@ -264,25 +272,25 @@ fn elevation(findings: &Findings) -> Option<String> {
     let most = changes.iter().min_by(|a, b| a.2.total_cmp(&b.2))?;
     let least = changes.iter().max_by(|a, b| a.2.total_cmp(&b.2))?;
     let title = &findings.basin.first()?.measure.title;
+    let where_and_how_much = |(lower_m, upper_m, percent): (f64, f64, f64)| {
+        let (percent, lower) = (signed(percent, 0), reader.elevation_bare(lower_m));
+        format!("{percent} % ({lower} to {})", reader.elevation(upper_m))
+    };
     Some(format!(
-        "By elevation, {title} at {} changes between {} % ({} to {} m) and {} % ({} to {} m).",
-        level(findings.levels_c[at]),
-        signed(most.2, 0),
-        fixed(most.0, 0),
-        fixed(most.1, 0),
-        signed(least.2, 0),
-        fixed(least.0, 0),
-        fixed(least.1, 0),
+        "By elevation, {title} at {} changes between {} and {}.",
+        reader.level(findings.levels_c[at]),
+        where_and_how_much(*most),
+        where_and_how_much(*least),
     ))
 }
 
-fn could_be_hidden(findings: &Findings, at: &LevelFindings) -> Option<String> {
+fn could_be_hidden(findings: &Findings, at: &LevelFindings, reader: Reader) -> Option<String> {
     let [beyond, year_beyond, back] = towards_shift(at)?;
     let side = if at.shift?.median.value < 0.0 { "below" } else { "above" };
     Some(format!(
         "At {}, an independent {}-year mean lies {side} a reference one with a chance of {}, a single year {side} a single \
          reference year with {}; {} of these realizations come back to the reference's median all the same.",
-        level(at.level_c),
+        reader.level(at.level_c),
         findings.years,
         chance(beyond),
         chance(year_beyond),

@@ -15,6 +15,7 @@ mod nearest;
 mod notes;
 mod precipitation_change;
 mod realizations;
+mod report;
 mod season;
 mod section;
 mod snow;
@@ -27,6 +28,7 @@ pub use draw::{Drawing, Located, draw, located, unlikely_lines};
 pub use hypsometry::HypsometryTyped;
 pub use notes::DefaultInForce;
 pub use realizations::RealizationsTyped;
+pub use report::ReportTyped;
 pub use warming::WarmingTyped;
 pub use weather::WeatherTyped;
 
@@ -58,6 +60,8 @@ pub struct Scenario {
     pub warming: WarmingTyped,
     /// Realizations.
     pub realizations: RealizationsTyped,
+    /// How results are told.
+    pub report: ReportTyped,
 }
 
 /// What could be read of a scenario, part by part: a part with a fault is missing, the others can still be used to look
@@ -82,6 +86,8 @@ pub struct Draft {
     pub warming: Option<WarmingTyped>,
     /// `[realizations]`.
     pub realizations: Option<RealizationsTyped>,
+    /// `[report]`.
+    pub report: Option<ReportTyped>,
     /// Every fault of the text.
     pub faults: Vec<Fault>,
     /// What is allowed but unlikely.
@@ -102,6 +108,7 @@ impl Draft {
             snow: self.snow?,
             warming: self.warming.clone()?,
             realizations: self.realizations.clone()?,
+            report: self.report?,
         })
     }
 }
@@ -130,8 +137,10 @@ pub fn read(document: &Document<'_>) -> Draft {
     let snow = snow::read(top.section("snow"), has_daily_range, is_southern);
     let warming = warming::read(top.section("warming"));
     let realizations = realizations::read(top.section("realizations"));
+    let report = report::read(top.section("report"));
     top.finish();
-    let mut draft = notes.into_draft(title, seed, (basin, weather, season, snow, warming, realizations));
+    let parts = (basin, weather, season, snow, warming, realizations, report);
+    let mut draft = notes.into_draft(title, seed, parts);
     document.keep_what_is_certain(&mut draft.faults);
     draft
 }

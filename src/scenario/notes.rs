@@ -1,6 +1,6 @@
 //! What is met while a scenario is read: faults, what is unlikely, defaults in force, files it names.
 
-use super::{BasinTyped, Draft, RealizationsTyped, WarmingTyped, WeatherTyped};
+use super::{BasinTyped, Draft, RealizationsTyped, ReportTyped, WarmingTyped, WeatherTyped};
 use crate::fault::{Fault, Unlikely};
 use crate::season::SeasonSettings;
 use crate::snow::SnowParams;
@@ -32,11 +32,12 @@ type Parts = (
     Option<SnowParams>,
     Option<WarmingTyped>,
     Option<RealizationsTyped>,
+    Option<ReportTyped>,
 );
 
 impl Notes {
     pub fn into_draft(self, title: Option<String>, seed: u64, parts: Parts) -> Draft {
-        let (basin, weather, season, snow, warming, realizations) = parts;
+        let (basin, weather, season, snow, warming, realizations, report) = parts;
         Draft {
             title,
             seed,
@@ -46,6 +47,7 @@ impl Notes {
             snow,
             warming,
             realizations,
+            report,
             faults: self.faults.into_inner(),
             unlikely: self.unlikely.into_inner(),
             defaults: self.defaults.into_inner(),

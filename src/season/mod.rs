@@ -28,7 +28,7 @@ pub const LEAST_PEAK_MM: f64 = 10.0;
 /// Dates of net melt are taken of no year that melts less, mm.
 const LEAST_MELT_MM: f64 = 1.0;
 /// A band with less is bare, mm.
-const BARE_MM: f64 = 1.0;
+pub const BARE_MM: f64 = 1.0;
 /// A basin with this share of its peak left has melted out.
 const BASIN_MELT_OUT_SHARE: f64 = 0.05;
 

@@ -10,6 +10,7 @@ use super::suspicious::Suspicion;
 use super::years::{Limits, Screening, SkippedYear};
 use crate::calendar::{MonthDay, WaterYearStart, date_of};
 use crate::fault::Fault;
+use crate::units::UnitSystem;
 use chrono::NaiveDate;
 use serde::Serialize;
 
@@ -140,7 +141,7 @@ pub fn read(
 fn nothing_usable(file: &str, skipped: &[SkippedYear]) -> Fault {
     let mut found = String::from("no water year that can be used");
     for year in skipped.iter().take(5) {
-        let why: Vec<String> = year.why.iter().map(ToString::to_string).collect();
+        let why: Vec<String> = year.why.iter().map(|why| why.words(UnitSystem::Metric)).collect();
         found += &format!("; {}: {}", year.water_year, why.join(", "));
     }
     if skipped.len() > 5 {

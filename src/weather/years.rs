@@ -2,9 +2,9 @@
 
 use super::gaps::Gap;
 use crate::calendar::{MonthDay, WaterYearStart, date_of, day_of_water_year, days_between};
+use crate::units::UnitSystem;
 use chrono::NaiveDate;
 use serde::Serialize;
-use std::fmt;
 
 /// Limits of the screening; all of them are settings.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
@@ -62,22 +62,25 @@ pub enum Why {
     },
 }
 
-impl fmt::Display for Why {
-    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+impl Why {
+    /// The reason in a sentence, temperatures in the reader's unit.
+    pub fn words(&self, units: UnitSystem) -> String {
         match self {
             Self::MissingDays { days } => {
-                write!(f, "temperature or precipitation missing on {}", days_in_words(*days))
+                format!("temperature or precipitation missing on {}", days_in_words(*days))
             }
             Self::BeyondRecord { days } => {
-                write!(f, "the record begins or ends within it and lacks {}", days_in_words(*days))
+                format!("the record begins or ends within it and lacks {}", days_in_words(*days))
             }
             Self::TemperatureGap { from, days } => {
-                write!(f, "no temperatures for {} from {from}", days_in_words(*days))
+                format!("no temperatures for {} from {from}", days_in_words(*days))
             }
-            Self::SeasonMean { season, mean_c, median_c } => write!(
-                f,
-                "{season}-season mean temperature {mean_c:.1} degC, the record's median {median_c:.1} degC"
-            ),
+            Self::SeasonMean { season, mean_c, median_c } => {
+                let unit = units.temperature();
+                let [mean, median] =
+                    [mean_c, median_c].map(|c| format!("{:.1} {}", unit.of(*c), unit.suffix));
+                format!("{season}-season mean temperature {mean}, the record's median {median}")
+            }
         }
     }
 }

@@ -6,4 +6,5 @@ mod interrupt;
 mod results;
 mod scenario_faults;
 mod streams;
+mod units;
 mod verdict;

@@ -6,6 +6,7 @@ use crate::calendar::{MonthDay, WaterYearStart};
 use crate::ensemble::{Seasons, Silent};
 use crate::findings::{Findings, Questions, answer};
 use crate::season::{Kind, Measure, NONE, NOT_GONE, Place};
+use crate::units::UnitSystem;
 use ndarray::{Array3, Array4};
 
 /// A made-up study: reference values spread evenly, each level a constant further.
@@ -76,8 +77,13 @@ impl Study<'_> {
     }
 
     pub fn draw(&self, title: &str, month: u32) -> Vec<Svg> {
+        self.draw_in(UnitSystem::Metric, title, month)
+    }
+
+    pub fn draw_in(&self, units: UnitSystem, title: &str, month: u32) -> Vec<Svg> {
         let setting = Setting {
             study_title: title,
+            units,
             water_year_starts: WaterYearStart(MonthDay::new(month, 1).unwrap()),
         };
         let findings = self.findings();

@@ -1,5 +1,6 @@
 //! One measure's dates: a row a level, the reference's range behind them.
 
+use super::super::Setting;
 use super::super::labels::{day_of_month, days, level, sentence, times};
 use super::super::marks::{Form, Marking, arrow, marker, point_interval};
 use super::super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
@@ -7,6 +8,7 @@ use super::super::theme::{BAND, EDGE, INK, LABEL, Lettering, MARGIN_PX, NAME, NO
 use crate::calendar::WaterYearStart;
 use crate::findings::{Findings, LevelFindings, MeasureFindings};
 use crate::season::Outcome;
+use crate::units::UnitSystem;
 use plotters::style::RGBColor;
 
 const HEADING_PX: f64 = 30.0;
@@ -21,27 +23,23 @@ pub(super) struct Area<'a> {
     pub right: f64,
 }
 
-/// One measure and its rows' labels.
+/// One measure, its rows' names, and their labels.
 pub(super) struct Panel<'a> {
     measure: &'a MeasureFindings,
     form: Form,
+    names: Vec<String>,
     rows: Vec<Vec<(String, Lettering)>>,
 }
 
 impl<'a> Panel<'a> {
-    pub fn new(
-        findings: &Findings,
-        measure: &'a MeasureFindings,
-        form: Form,
-        starts: WaterYearStart,
-    ) -> Self {
-        let rows = measure
-            .levels
-            .iter()
-            .enumerate()
-            .map(|(at, found)| lines(found, at == findings.reference, starts))
+    pub fn new(findings: &Findings, measure: &'a MeasureFindings, form: Form, setting: &Setting<'_>) -> Self {
+        let levels =
+            || measure.levels.iter().enumerate().map(|(at, found)| (found, at == findings.reference));
+        let names = levels().map(|(found, is_reference)| name(found, is_reference, setting.units)).collect();
+        let rows = levels()
+            .map(|(found, is_reference)| lines(found, is_reference, setting.water_year_starts))
             .collect();
-        Self { measure, form, rows }
+        Self { measure, form, names, rows }
     }
 
     /// Days of every quantile that is drawn.
@@ -50,9 +48,8 @@ impl<'a> Panel<'a> {
     }
 
     /// Width of the widest level's name, px.
-    pub fn name_width(&self, findings: &Findings) -> f64 {
-        let names = self.measure.levels.iter().enumerate();
-        names.map(|(at, found)| NAME.width(&name(found, at == findings.reference))).fold(0.0, f64::max)
+    pub fn name_width(&self) -> f64 {
+        self.names.iter().map(|name| NAME.width(name)).fold(0.0, f64::max)
     }
 
     /// Width of the widest label at the right, px.
@@ -77,7 +74,8 @@ impl<'a> Panel<'a> {
         let room_from = MARGIN_PX + 20.0 + NAME.width(&title) + 24.0;
         self.band(sheet, area, [rows_top - 4.0, bottom], room_from)?;
         let mut top = rows_top;
-        for (at, (found, lines)) in self.measure.levels.iter().zip(&self.rows).enumerate() {
+        let rows = self.measure.levels.iter().zip(&self.names).zip(&self.rows);
+        for (at, ((found, name), lines)) in rows.enumerate() {
             let is_reference = at == findings.reference;
             let marking = Marking {
                 ink: level_ink(at, findings.reference, self.measure.levels.len()),
@@ -85,7 +83,7 @@ impl<'a> Panel<'a> {
                 is_hollow: is_reference,
             };
             let y = top + ROW_PX / 2.0;
-            sheet.write(&name(found, is_reference), (MARGIN_PX, y), NAME, HPos::Left, VPos::Center)?;
+            sheet.write(name, (MARGIN_PX, y), NAME, HPos::Left, VPos::Center)?;
             sheet.group("level", || row(sheet, area, found, y, marking))?;
             for (at, (text, lettering)) in lines.iter().enumerate() {
                 let place = (area.right + 16.0, y + NOTE.leading() * at as f64);
@@ -150,11 +148,11 @@ fn quantiles(found: &LevelFindings) -> [Outcome; 5] {
     [periods.q05, periods.q25, periods.q50, periods.q75, periods.q95]
 }
 
-fn name(found: &LevelFindings, is_reference: bool) -> String {
+fn name(found: &LevelFindings, is_reference: bool, units: UnitSystem) -> String {
     match (is_reference, found.level_c == 0.0) {
         (true, true) => "reference".to_owned(),
-        (true, false) => format!("reference, {}", level(found.level_c)),
-        (false, _) => level(found.level_c),
+        (true, false) => format!("reference, {}", level(units, found.level_c)),
+        (false, _) => level(units, found.level_c),
     }
 }
 

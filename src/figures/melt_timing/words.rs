@@ -1,9 +1,8 @@
 //! What the figure says beside its title.
 
-use super::super::ensemble;
 use super::super::labels::{day_of_month, level, sentence};
 use super::super::reading::Reading;
-use crate::calendar::WaterYearStart;
+use super::super::{Setting, ensemble};
 use crate::findings::{Findings, MeasureFindings};
 use crate::season::Outcome;
 
@@ -17,7 +16,7 @@ pub(super) struct Words {
 }
 
 impl Words {
-    pub fn of(findings: &Findings, measures: &[&MeasureFindings], starts: WaterYearStart) -> Self {
+    pub fn of(findings: &Findings, measures: &[&MeasureFindings], setting: &Setting<'_>) -> Self {
         let ensemble = ensemble(findings);
         let names: Vec<&str> = measures.iter().map(|found| found.measure.title.as_str()).collect();
         let names = sentence(&names.join(" and "));
@@ -38,7 +37,7 @@ impl Words {
             kind_of_drawing: format!("Point-intervals of {} levels on a calendar.", findings.levels_c.len()),
             description: measures
                 .iter()
-                .map(|found| described(findings, found, starts))
+                .map(|found| described(findings, found, setting))
                 .collect::<Vec<_>>()
                 .join(" "),
             ensemble: reading.ensemble(findings),
@@ -46,9 +45,14 @@ impl Words {
     }
 }
 
-fn described(findings: &Findings, measure: &MeasureFindings, starts: WaterYearStart) -> String {
+fn described(findings: &Findings, measure: &MeasureFindings, setting: &Setting<'_>) -> String {
+    let starts = setting.water_year_starts;
     let levels = measure.levels.iter().enumerate().map(|(at, found)| {
-        let label = if at == findings.reference { "reference".to_owned() } else { level(found.level_c) };
+        let label = if at == findings.reference {
+            "reference".to_owned()
+        } else {
+            level(setting.units, found.level_c)
+        };
         let values = [found.periods.q50, found.periods.q05, found.periods.q95].map(Outcome::value);
         match values {
             [Some(median), Some(early), Some(late)] => {

@@ -4,6 +4,7 @@ use super::super::labels::{level, signed, signed_percent, size, times};
 use super::super::sheet::{Drawn, HPos, Sheet, VPos};
 use super::super::theme::{LABEL, Lettering, NAME, NOTE};
 use crate::findings::{Findings, LevelFindings, MeasureFindings};
+use crate::units::UnitSystem;
 
 /// Where the levels stand: as far apart as they are, or evenly where that would be too tight.
 pub(super) struct Columns {
@@ -15,7 +16,7 @@ pub(super) struct Columns {
 pub(super) struct Labels {
     columns: Vec<Vec<(String, Lettering)>>,
     /// Words at the right of a line, where columns hold bare numbers.
-    beside: Vec<(usize, &'static str)>,
+    beside: Vec<(usize, String)>,
 }
 
 /// From a point to the first of its dots, px.
@@ -67,33 +68,39 @@ impl Columns {
     }
 
     /// What is written below the columns: in words where they fit, else as bare numbers with the words at the right.
-    pub fn labels(&self, findings: &Findings, measure: &MeasureFindings) -> Labels {
-        let in_words = Labels::new(findings, measure, true);
-        if in_words.width() + 8.0 <= self.width { in_words } else { Labels::new(findings, measure, false) }
+    pub fn labels(&self, findings: &Findings, measure: &MeasureFindings, units: UnitSystem) -> Labels {
+        let in_words = Labels::new(findings, measure, units, true);
+        if in_words.width() + 8.0 <= self.width {
+            in_words
+        } else {
+            Labels::new(findings, measure, units, false)
+        }
     }
 }
 
 impl Labels {
-    fn new(findings: &Findings, measure: &MeasureFindings, in_words: bool) -> Self {
+    fn new(findings: &Findings, measure: &MeasureFindings, units: UnitSystem, in_words: bool) -> Self {
+        let unit = units.depth().word;
         let has_percent = measure.levels.iter().any(|level| level.percent_change.is_some());
         let has_ratio = measure.levels.iter().any(|level| level.signal_to_spread.is_some());
-        let (mm, the_spread) = if in_words { (" mm", " half spread") } else { ("", "") };
+        let with_unit = |number: String| if in_words { format!("{number} {unit}") } else { number };
+        let the_spread = if in_words { " half spread" } else { "" };
         let of_reference = |found: &LevelFindings| {
             let value = match found.periods.q50.value() {
-                Some(median) => vec![(format!("{}{mm}", size(median)), LABEL), ("median".to_owned(), NOTE)],
+                Some(median) => vec![(with_unit(size(units, median)), LABEL), ("median".to_owned(), NOTE)],
                 None => vec![("no value".to_owned(), NOTE)],
             };
-            let place = (found.level_c != 0.0).then(|| (format!("at {}", level(found.level_c)), NOTE));
+            let place = (found.level_c != 0.0).then(|| (format!("at {}", level(units, found.level_c)), NOTE));
             let name = ("reference".to_owned(), NAME);
             std::iter::once(name).chain(value).chain(place).collect()
         };
         let of_level = |found: &LevelFindings| {
-            let mut lines = vec![(level(found.level_c), NAME)];
+            let mut lines = vec![(level(units, found.level_c), NAME)];
             let Some(shift) = found.shift else {
                 lines.push(("no value".to_owned(), NOTE));
                 return lines;
             };
-            lines.push((format!("{}{mm}", signed(shift.median.value)), LABEL));
+            lines.push((with_unit(signed(units, shift.median.value)), LABEL));
             if has_percent {
                 lines.push((found.percent_change.map_or_else(String::new, signed_percent), LABEL));
             }
@@ -109,9 +116,9 @@ impl Labels {
             .map(|(at, found)| if at == findings.reference { of_reference(found) } else { of_level(found) });
         let mut beside = Vec::new();
         if !in_words {
-            beside.push((1, "mm, median change"));
+            beside.push((1, format!("{unit}, median change")));
             if has_ratio {
-                beside.push((if has_percent { 3 } else { 2 }, "half spread"));
+                beside.push((if has_percent { 3 } else { 2 }, "half spread".to_owned()));
             }
         }
         Self { columns: columns.collect(), beside }

@@ -1,12 +1,13 @@
 //! What the figure says beside its title.
 
 use super::super::ensemble;
-use super::super::labels::{level, sentence, size};
+use super::super::labels::{level, sentence, size, size_and_unit};
 use super::super::reading::Reading;
 use super::super::theme::{LABEL, Lettering, NAME};
 use super::columns::is_to_scale;
 use crate::findings::{DOTS, Findings, MeasureFindings, Spread};
 use crate::season::Outcome;
+use crate::units::UnitSystem;
 
 /// Every text of the figure but its title and the levels' labels.
 pub(super) struct Words {
@@ -19,7 +20,7 @@ pub(super) struct Words {
 }
 
 impl Words {
-    pub fn of(findings: &Findings, measure: &MeasureFindings) -> Self {
+    pub fn of(findings: &Findings, measure: &MeasureFindings, units: UnitSystem) -> Self {
         let ensemble = ensemble(findings);
         let name = sentence(&measure.measure.title);
         let years =
@@ -36,17 +37,19 @@ impl Words {
             reading.caption()
         );
         let described = measure.levels.iter().enumerate().map(|(at, found)| {
-            let label = if at == findings.reference { "reference".to_owned() } else { level(found.level_c) };
+            let label =
+                if at == findings.reference { "reference".to_owned() } else { level(units, found.level_c) };
             let values = [found.periods.q50, found.periods.q05, found.periods.q95].map(Outcome::value);
             match values {
                 [Some(median), Some(low), Some(high)] => {
-                    format!("{label}: median {} mm, 5–95 % {} to {} mm", size(median), size(low), size(high))
+                    let [median, high] = [median, high].map(|amount_mm| size_and_unit(units, amount_mm));
+                    format!("{label}: median {median}, 5–95 % {} to {high}", size(units, low))
                 }
                 _ => format!("{label}: no value"),
             }
         });
         Self {
-            axis: format!("{name}, basin mean, {years} (mm)"),
+            axis: format!("{name}, basin mean, {years} ({})", units.depth().word),
             kind_of_drawing: format!(
                 "Point-intervals{} of {} levels against the band of the reference.",
                 if dots { " and dots" } else { "" },
@@ -64,10 +67,10 @@ impl Words {
 }
 
 /// The lines beside the band.
-pub(super) fn of_band(spread: &Spread) -> [(String, Lettering); 3] {
+pub(super) fn of_band(spread: &Spread, units: UnitSystem) -> [(String, Lettering); 3] {
     [
         ("9 in 10 realizations".to_owned(), NAME),
         ("at the reference:".to_owned(), LABEL),
-        (format!("{}–{} mm", size(spread.q05), size(spread.q95)), LABEL),
+        (format!("{}–{}", size(units, spread.q05), size_and_unit(units, spread.q95)), LABEL),
     ]
 }

@@ -1,6 +1,7 @@
 //! The answer: the verdict, a line a level, and what it is measured with.
 
-use super::super::numbers::{DASH, days_moved, fixed, level, signed};
+use super::super::numbers::{DASH, days_moved, fixed, signed};
+use super::super::reader::Reader;
 use super::super::study::Study;
 use super::super::words::{Answer, chance_in_table, towards_shift};
 use crate::findings::{Estimate, Findings, MeasureFindings};
@@ -12,14 +13,14 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
         h2 { "Answer" }
         p.verdict { (answer.verdict) }
         ul { @for sentence in answer.amounts.iter().chain(&answer.elevation) { li { (sentence) } } }
-        @if let Some(headline) = study.findings.basin.first() { (by_level(study.findings, headline)) }
+        @if let Some(headline) = study.findings.basin.first() { (by_level(study.findings, headline, study.reader)) }
         h3 { "How it is measured" }
         @for sentence in &answer.yardstick { p { (sentence) } }
     }
 }
 
 /// A row a level: how much, against what, how much earlier, and whether chance could hide it.
-fn by_level(findings: &Findings, headline: &MeasureFindings) -> Markup {
+fn by_level(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> Markup {
     let moved = |name: &str, at: usize| {
         let measure = findings.basin.iter().find(|measure| measure.measure.name == name)?;
         Some(days_moved(measure.levels[at].shift?.median.value))
@@ -43,9 +44,9 @@ fn by_level(findings: &Findings, headline: &MeasureFindings) -> Markup {
                 th scope="col" { "Back at the" br; "reference's median" }
             } }
             tbody { @for (at, found) in headline.levels.iter().enumerate() { @if let Some(shift) = found.shift { tr {
-                th scope="row" { (level(found.level_c)) }
+                th scope="row" { (reader.level(found.level_c)) }
                 td {
-                    (signed(shift.median.value, super::super::numbers::amount_decimals(shift.median.value))) " mm"
+                    (reader.change(shift.median.value))
                     @if let Some(percent) = found.percent_change { " (" (signed(percent, 0)) " %)" }
                 }
                 td { (or_dash(found.signal_to_spread.map(ratio))) }

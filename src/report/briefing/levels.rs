@@ -1,15 +1,16 @@
 //! Tables level by level: the basin's measures, and the headline by elevation.
 
-use super::super::numbers::{DASH, amount_decimals, fixed, level, outcome, signed};
+use super::super::numbers::{DASH, fixed, signed};
+use super::super::reader::Reader;
 use super::super::study::Study;
 use super::super::words::period_name;
-use crate::findings::{LevelFindings, MeasureFindings};
+use crate::findings::{LEAST_REFERENCE_MM, LevelFindings, MeasureFindings};
 use crate::season::Kind;
 use maud::{Markup, html};
 
 /// The section.
 pub(super) fn section(study: &Study<'_>) -> Markup {
-    let findings = study.findings;
+    let (findings, reader) = (study.findings, study.reader);
     html! {
         h2 { "Level by level" }
         div.scroll {
@@ -18,11 +19,11 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
                     "-year values; below it the median paired change from the reference, and how many times its half spread that is." }
                 thead { tr {
                     th scope="col" { "Measure" }
-                    @for level_c in &findings.levels_c { th scope="col" { (level(*level_c)) } }
+                    @for level_c in &findings.levels_c { th scope="col" { (reader.level(*level_c)) } }
                 } }
                 tbody { @for measure in &findings.basin { tr {
                     th scope="row" { (measure.measure.title) }
-                    @for at in &measure.levels { td { (level_cell(study, measure, at)) } }
+                    @for at in &measure.levels { td { (level_cell(reader, measure, at)) } }
                 } } }
             }
         }
@@ -30,16 +31,20 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             h3 { "By elevation: " (period_name(findings, headline)) }
             div.scroll {
                 table {
-                    caption { "Median over realizations; in brackets the change from the reference, where its median is 10 mm or more." }
+                    caption {
+                        "Median over realizations; in brackets the change from the reference, where its median is "
+                        (reader.limit(LEAST_REFERENCE_MM)) " or more."
+                    }
                     thead { tr {
-                        th scope="col" { "Band, m" } th scope="col" { "Area, km²" }
-                        @for level_c in &findings.levels_c { th scope="col" { (level(*level_c)) } }
+                        th scope="col" { "Band, " (reader.units.elevation().word) }
+                        th scope="col" { "Area, " (reader.units.area().word) }
+                        @for level_c in &findings.levels_c { th scope="col" { (reader.level(*level_c)) } }
                     } }
                     tbody { @for band in findings.bands.iter().rev() { @if let Some(measure) = band.measures.first() { tr {
-                        th scope="row" { (fixed(band.band.lower_m, 0)) " – " (fixed(band.band.upper_m, 0)) }
-                        td { (fixed(band.band.area_km2, 1)) }
+                        th scope="row" { (reader.elevation_bare(band.band.lower_m)) " – " (reader.elevation_bare(band.band.upper_m)) }
+                        td { (reader.area_bare(band.band.area_km2)) }
                         @for at in &measure.levels { td {
-                            (outcome(at.periods.q50, Kind::AmountMm, study.starts()))
+                            (reader.outcome(at.periods.q50, Kind::AmountMm))
                             @if let Some(percent) = at.percent_change { " (" (signed(percent, 0)) " %)" }
                         } }
                     } } } }
@@ -50,16 +55,16 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
     }
 }
 
-fn level_cell(study: &Study<'_>, measure: &MeasureFindings, at: &LevelFindings) -> Markup {
+fn level_cell(reader: Reader, measure: &MeasureFindings, at: &LevelFindings) -> Markup {
     let kind = measure.measure.kind;
     let undefined = at.periods.none + at.periods.not_gone;
     html! {
-        (outcome(at.periods.q50, kind, study.starts()))
+        (reader.outcome(at.periods.q50, kind))
         @if let Some(shift) = at.shift {
             br;
             @match kind {
                 Kind::AmountMm => {
-                    (signed(shift.median.value, amount_decimals(shift.median.value))) " mm"
+                    (reader.change(shift.median.value))
                     @if let Some(percent) = at.percent_change { ", " (signed(percent, 0)) " %" }
                 }
                 Kind::DayOfWaterYear => { (signed(shift.median.value, 0)) " d" }

@@ -1,12 +1,12 @@
 //! The record: what there is, what was left out and why, and what the model makes of its own years.
 
-use super::super::numbers::{amount, fixed, outcome};
+use super::super::numbers::fixed;
 use super::super::study::Study;
 use maud::{Markup, html};
 
 /// The section.
 pub(super) fn section(study: &Study<'_>) -> Markup {
-    let record = &study.record;
+    let (record, reader) = (&study.record, study.reader);
     let counts = record.counts;
     let headline = record.measures.first();
     html! {
@@ -14,7 +14,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
         p {
             (counts.first) " to " (counts.last) ", " (fixed(counts.days as f64, 0)) " days: " (record.years.len()) " water years in use, "
             (record.skipped.len()) " left out. Mean yearly precipitation at the station, after the catch correction, "
-            (amount(record.mean_precipitation_mm)) "; in the years in use, " (counts.interpolated_days)
+            (reader.amount(record.mean_precipitation_mm)) "; in the years in use, " (counts.interpolated_days)
             " days have interpolated temperatures and " (counts.dry_for_want_of_data_days)
             " run without precipitation because it is missing."
             @if counts.crossed_temperature_days > 0 {
@@ -22,7 +22,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             }
             @if let Some(gauge) = counts.gauge {
                 " The accumulating gauge was set back " (gauge.resets) " times and fell a little " (gauge.small_falls)
-                " times (" (amount(gauge.small_falls_mm)) " in all, taken for noise)."
+                " times (" (reader.amount(gauge.small_falls_mm)) " in all, taken for noise)."
             }
         }
         @if !record.skipped.is_empty() {
@@ -31,7 +31,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
                 thead { tr { th scope="col" { "Water year" } th.text scope="col" { "Why" } } }
                 tbody { @for year in record.skipped { tr {
                     th scope="row" { (year.water_year) }
-                    td.text { @for (at, why) in year.why.iter().enumerate() { @if at > 0 { "; " } (why) } }
+                    td.text { @for (at, why) in year.why.iter().enumerate() { @if at > 0 { "; " } (why.words(reader.units)) } }
                 } } }
             } }
         }
@@ -40,12 +40,12 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             p {
                 (headline.title) " of the basin mean by water year"
                 @if let Some([mean, variation]) = record.headline_mean_and_variation() {
-                    ": mean " (amount(mean)) ", coefficient of variation " (fixed(variation, 2))
+                    ": mean " (reader.amount(mean)) ", coefficient of variation " (fixed(variation, 2))
                 } "."
             }
             dl.years { @for year in &record.years { div {
                 dt { (year.water_year) }
-                dd { (outcome(year.values[0].into(), headline.kind, study.starts())) }
+                dd { (reader.outcome(year.values[0].into(), headline.kind)) }
             } } }
         }
     }

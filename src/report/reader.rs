@@ -1,0 +1,171 @@
+//! Quantities as one reader takes them: in the reader's units, rounded to what they can bear, with the unit's word.
+
+use super::numbers::{date, fixed, signed, trimmed};
+use crate::calendar::WaterYearStart;
+use crate::season::{Kind, Outcome};
+use crate::units::UnitSystem;
+
+/// Who reads.
+#[derive(Debug, Clone, Copy)]
+pub struct Reader {
+    /// The units that the reader asked for.
+    pub units: UnitSystem,
+    /// The first day of the reader's water years.
+    pub starts: WaterYearStart,
+}
+
+impl Reader {
+    /// `412 mm`, `16.2 in`: a depth of water.
+    pub fn amount(self, value_mm: f64) -> String {
+        let depth = self.units.depth();
+        format!("{} {}", fixed(depth.of(value_mm), self.amount_decimals(value_mm)), depth.word)
+    }
+
+    /// `−112 mm`, `+0.43 in`: a change of a depth of water.
+    pub fn change(self, value_mm: f64) -> String {
+        let depth = self.units.depth();
+        format!("{} {}", signed(depth.of(value_mm), self.amount_decimals(value_mm)), depth.word)
+    }
+
+    /// `−130 and −94 mm`: two changes with the decimals of the larger.
+    pub fn change_and_change(self, low_mm: f64, high_mm: f64) -> String {
+        let depth = self.units.depth();
+        let decimals = self.amount_decimals(low_mm.abs().max(high_mm.abs()));
+        let [low, high] = [low_mm, high_mm].map(|mm| signed(depth.of(mm), decimals));
+        format!("{low} and {high} {}", depth.word)
+    }
+
+    /// `10 mm`, `0.39 in`: a stated depth, with the decimals that it needs.
+    pub fn limit(self, value_mm: f64) -> String {
+        let depth = self.units.depth();
+        format!("{} {}", trimmed(&fixed(depth.of(value_mm), 2)), depth.word)
+    }
+
+    /// Whole mm and tenths below 10 mm; tenths of an inch and hundredths below 1 in.
+    fn amount_decimals(self, value_mm: f64) -> usize {
+        let size = self.units.depth().of(value_mm).abs();
+        match self.units {
+            UnitSystem::Metric => usize::from(size < 9.95),
+            UnitSystem::Us => 1 + usize::from(size < 0.995),
+        }
+    }
+
+    /// `−1 °C`, `33.8 °F`: a temperature, with the decimals that it has, at most two.
+    pub fn temperature(self, temperature_c: f64) -> String {
+        let unit = self.units.temperature();
+        format!("{} {}", trimmed(&fixed(unit.of(temperature_c), 2)), unit.word)
+    }
+
+    /// `+2 °C`, `+3.6 °F`: a warming level, with the decimals that it has, at most two.
+    pub fn level(self, level_c: f64) -> String {
+        let unit = self.units.warming();
+        format!("{} {}", trimmed(&signed(unit.of(level_c), 2)), unit.word)
+    }
+
+    /// `+1.4 °C`: a warming between levels, to a tenth.
+    pub fn between_levels(self, warming_c: f64) -> String {
+        format!("{} {}", self.between_levels_bare(warming_c), self.units.warming().word)
+    }
+
+    /// The same without its unit.
+    pub fn between_levels_bare(self, warming_c: f64) -> String {
+        signed(self.units.warming().of(warming_c), 1)
+    }
+
+    /// `1830 m`, `6004 ft`.
+    pub fn elevation(self, elevation_m: f64) -> String {
+        format!("{} {}", self.elevation_bare(elevation_m), self.units.elevation().word)
+    }
+
+    /// The same without its unit.
+    pub fn elevation_bare(self, elevation_m: f64) -> String {
+        fixed(self.units.elevation().of(elevation_m), 0)
+    }
+
+    /// `61.4`: an area without its unit.
+    pub fn area_bare(self, area_km2: f64) -> String {
+        fixed(self.units.area().of(area_km2), 1)
+    }
+
+    /// `0.5 to 3.5 mm per °C and day`: two degree-day factors.
+    pub fn degree_day_factors(self, lowest: f64, highest: f64) -> String {
+        let unit = self.units.degree_day_factor();
+        let [lowest, highest] =
+            [lowest, highest].map(|factor| trimmed(&fixed(unit.of(factor), 3)).to_owned());
+        format!("{lowest} to {highest} {}", unit.word)
+    }
+
+    /// `+3.0 % per °C`: what precipitation does with warming.
+    pub fn percent_per_degree(self, pct_per_c: f64) -> String {
+        let unit = self.units.percent_per_degree();
+        format!("{} {}", signed(unit.of(pct_per_c), 1), unit.word)
+    }
+
+    /// A measure's value in words.
+    pub fn outcome(self, outcome: Outcome, kind: Kind) -> String {
+        match (outcome, kind) {
+            (Outcome::Value(value), Kind::AmountMm) => self.amount(value),
+            (Outcome::Value(value), Kind::DayOfWaterYear) => date(value, self.starts),
+            (Outcome::None, _) => "none".to_owned(),
+            (Outcome::NotGone, _) => "not gone".to_owned(),
+        }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::calendar::MonthDay;
+
+    fn reader(units: UnitSystem) -> Reader {
+        Reader { units, starts: WaterYearStart(MonthDay::new(10, 1).unwrap()) }
+    }
+
+    #[test]
+    fn amounts_have_the_decimals_of_their_unit() {
+        let [metric, us] = [UnitSystem::Metric, UnitSystem::Us].map(reader);
+        assert_eq!(
+            [412.4, 9.96, 9.9, 0.0].map(|mm| metric.amount(mm)),
+            ["412 mm", "10 mm", "9.9 mm", "0.0 mm"]
+        );
+        // 25.4 mm are an inch, by hand.
+        assert_eq!([254.0, 25.4, 12.7].map(|mm| us.amount(mm)), ["10.0 in", "1.0 in", "0.50 in"]);
+        assert_eq!(us.change(-127.0), "−5.0 in");
+        assert_eq!(us.change_and_change(-127.0, 12.7), "−5.0 and +0.5 in");
+        assert_eq!([metric.limit(10.0), us.limit(10.0), us.limit(1.0)], ["10 mm", "0.39 in", "0.04 in"]);
+    }
+
+    #[test]
+    fn temperatures_have_a_zero_to_move_and_warmings_have_none() {
+        let [metric, us] = [UnitSystem::Metric, UnitSystem::Us].map(reader);
+        assert_eq!([2.0, -1.5, 0.0].map(|c| metric.level(c)), ["+2 °C", "−1.5 °C", "0 °C"]);
+        assert_eq!([2.0, -1.5, 0.0].map(|c| us.level(c)), ["+3.6 °F", "−2.7 °F", "0 °F"]);
+        assert_eq!([2.0, -1.0, 0.5].map(|c| us.temperature(c)), ["35.6 °F", "30.2 °F", "32.9 °F"]);
+        assert_eq!([10.0, -1.0].map(|c| metric.temperature(c)), ["10 °C", "−1 °C"]);
+        assert_eq!([metric.between_levels(1.44), us.between_levels(1.5)], ["+1.4 °C", "+2.7 °F"]);
+    }
+
+    #[test]
+    fn levels_that_are_no_short_decimals_read_well() {
+        let metric = reader(UnitSystem::Metric);
+        assert_eq!(
+            [0.59819, 3.600_000_000_000_000_5, 1.25].map(|c| metric.level(c)),
+            ["+0.6 °C", "+3.6 °C", "+1.25 °C"]
+        );
+        assert_eq!(reader(UnitSystem::Us).level(0.59819), "+1.08 °F");
+    }
+
+    /// By hand: 1830 m / 0.3048; 0.5 and 3.5 mm per degC are 0.5 / 25.4 / 1.8 and 3.5 / 25.4 / 1.8 in per degF; 7 %
+    /// compounded over 5/9 degC are 100 * (1.07^(5/9) - 1) = 3.83.
+    #[test]
+    fn other_quantities() {
+        let [metric, us] = [UnitSystem::Metric, UnitSystem::Us].map(reader);
+        assert_eq!([metric.elevation(1830.0), us.elevation(1830.0)], ["1830 m", "6004 ft"]);
+        assert_eq!(metric.degree_day_factors(0.25, 3.0), "0.25 to 3 mm per °C and day");
+        assert_eq!(us.degree_day_factors(0.5, 3.5), "0.011 to 0.077 in per °F and day");
+        assert_eq!(
+            [metric.percent_per_degree(7.0), us.percent_per_degree(7.0)],
+            ["+7.0 % per °C", "+3.8 % per °F"]
+        );
+    }
+}
