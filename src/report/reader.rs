@@ -62,6 +62,12 @@ impl Reader {
         format!("{} {}", trimmed(&signed(unit.of(level_c), 2)), unit.word)
     }
 
+    /// `0.6 °C`, `1.08 °F`: the size of a difference of temperatures.
+    pub fn difference(self, difference_c: f64) -> String {
+        let unit = self.units.warming();
+        format!("{} {}", trimmed(&fixed(unit.of(difference_c), 2)), unit.word)
+    }
+
     /// `+1.4 °C`: a warming between levels, to a tenth.
     pub fn between_levels(self, warming_c: f64) -> String {
         format!("{} {}", self.between_levels_bare(warming_c), self.units.warming().word)
@@ -141,6 +147,7 @@ mod tests {
         assert_eq!([2.0, -1.5, 0.0].map(|c| metric.level(c)), ["+2 °C", "−1.5 °C", "0 °C"]);
         assert_eq!([2.0, -1.5, 0.0].map(|c| us.level(c)), ["+3.6 °F", "−2.7 °F", "0 °F"]);
         assert_eq!([2.0, -1.0, 0.5].map(|c| us.temperature(c)), ["35.6 °F", "30.2 °F", "32.9 °F"]);
+        assert_eq!([metric.difference(0.6), us.difference(0.6)], ["0.6 °C", "1.08 °F"]);
         assert_eq!([10.0, -1.0].map(|c| metric.temperature(c)), ["10 °C", "−1 °C"]);
         assert_eq!([metric.between_levels(1.44), us.between_levels(1.5)], ["+1.4 °C", "+2.7 °F"]);
     }

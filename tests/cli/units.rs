@@ -191,6 +191,19 @@ fn the_record_is_told_in_the_same_units() {
     assert!(until_defaults.contains("0 °F, +3.6 °F"), "{checked}");
 }
 
+/// Notices speak of the scenario's own numbers, which are metric whoever reads them, and the page says so.
+#[test]
+fn notices_keep_the_units_of_the_scenario() {
+    let basin = Basin::new();
+    basin.exchange("temperature_gradient_c_per_km = -6.0", "temperature_gradient_c_per_km = -9.0");
+    both(&basin);
+    let page = basin.read("us/briefing.html");
+    let (_, notices) =
+        page.split_once("<h3>Unlikely, but allowed (in the scenario's metric units)</h3>").unwrap();
+    assert!(notices.contains("outside -8 to -2 degC per km"), "{notices}");
+    assert!(basin.read("metric/briefing.html").contains("<h3>Unlikely, but allowed</h3>"));
+}
+
 /// A level that is no short decimal reads well, and stands in full in the tables.
 #[test]
 fn levels_that_are_no_short_decimals() {

@@ -33,7 +33,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             dt { "Warming" } dd { "added to every day's temperatures; storms, wet days and their order stay; precipitation changes "
                 (precipitation_in_words(reader, &study.warming.precipitation))
                 @if let Some(global) = study.warming.global { "; levels of global warming stand as "
-                    (fixed(global.local_per_global, 2)) " times what they add to the " (reader.level(global.already_in_record_c)) " that the record already holds" } }
+                    (fixed(global.local_per_global, 2)) " times what they add to the " (reader.difference(global.already_in_record_c)) " that the record already holds" } }
             dt { "Realizations" } dd { "whole water years of the record in runs of " (fixed(study.mean_run_years, 1)) " years in the mean; the same realization under every level"
                 @match study.mean_change_sd_pct { Some(sd) => { "; mean precipitation changed at random, standard deviation " (fixed(sd, 1)) " % (an assumption)" } None => {} } }
         }
@@ -42,7 +42,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             p { @for (at, (key, value)) in study.defaults.iter().enumerate() { @if at > 0 { ", " } code { (key) " = " (value) } } }
         }
         @if !study.unlikely.is_empty() {
-            h3 { "Unlikely, but allowed" @if reader.units != UnitSystem::Metric { ", in the scenario's metric units" } }
+            h3 { "Unlikely, but allowed" @if reader.units != UnitSystem::Metric { " (in the scenario's metric units)" } }
             ul { @for notice in study.unlikely { li { code { (notice.about) } ": " (notice.why) } } }
         }
     }
