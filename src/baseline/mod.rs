@@ -23,6 +23,7 @@ pub use theil_sen::{TheilSen, theil_sen};
 pub use wilson::wilson;
 
 use crate::calendar::MonthDay;
+use crate::fault::Unlikely;
 use crate::weather::Series;
 use serde::Serialize;
 
@@ -34,6 +35,9 @@ pub const LEAST_YEARS: usize = 8;
 
 /// A test is called significant below this p.
 pub const SIGNIFICANT_BELOW_P: f64 = 0.05;
+
+/// A trend is drawn out beyond the record's own years by no more than this without a word, years.
+const DETREND_REACH_YEARS: i32 = 5;
 
 /// Quantile of the standard normal distribution at 0.975.
 const NORMAL_975: f64 = 1.959_963_984_540_054;
@@ -88,6 +92,40 @@ impl Baseline {
             cool_precipitation: YearlyTests::of(&seasons.cool.precipitation_mm),
             warm_temperature: YearlyTests::of(&seasons.warm.mean_c),
         })
+    }
+}
+
+impl Baseline {
+    /// What about the record as a baseline is unlikely: a trend of temperature that stays in, or one taken out to a year far
+    /// from the record's own.
+    pub fn unlikely(&self, detrend_to: Option<i32>) -> Vec<Unlikely> {
+        let mut found = Vec::new();
+        let seasons = [("cool", &self.cool_temperature), ("warm", &self.warm_temperature)];
+        for (season, tests) in seasons {
+            let Some(tests) = tests.as_ref().filter(|tests| tests.mann_kendall.is_significant()) else {
+                continue;
+            };
+            if detrend_to.is_none() {
+                let per_decade_c = 10.0 * tests.theil_sen.slope_per_year;
+                found.push(Unlikely::new(
+                    "weather temperature",
+                    format!(
+                        "the {season} season has a trend of {per_decade_c:+.2} degC per decade, so its years do not stand for \
+                         one climate. If no change of sensor made it, detrend_to = {:.0} in [weather] takes it out",
+                        self.mid_year
+                    ),
+                ));
+            }
+        }
+        let near = self.first_water_year - DETREND_REACH_YEARS..=self.last_water_year + DETREND_REACH_YEARS;
+        if let Some(year) = detrend_to.filter(|year| !near.contains(year)) {
+            let (first, last) = (self.first_water_year, self.last_water_year);
+            let why = format!(
+                "{year} lies far from the record's own years, {first} to {last}: a trend is drawn out to there"
+            );
+            found.push(Unlikely::new("weather.detrend_to", why));
+        }
+        found
     }
 }
 

@@ -3,6 +3,7 @@
 use super::arguments::Shared;
 use super::failure::Failure;
 use super::input::{InputFile, ScenarioFile, missing_file, read_data, read_scenario};
+use crate::baseline::{Baseline, Detrended, LEAST_YEARS, detrend};
 use crate::basin::Basin;
 use crate::fault::{Fault, Unlikely};
 use crate::perturb::MonthlyChange;
@@ -18,8 +19,14 @@ pub(super) struct Ready {
     pub basin: Basin,
     /// The record, its precipitation as the gauge caught it.
     pub record: Record,
-    /// The usable years, precipitation corrected for catch.
+    /// The usable years as observed, precipitation corrected for catch.
     pub weather: Series,
+    /// The years that realizations are drawn from: the same, detrended where that is asked for.
+    pub drawn_from: Series,
+    /// The trend that was taken out of them.
+    pub detrended: Option<Detrended>,
+    /// Trends and steps of the record.
+    pub baseline: Option<Baseline>,
     pub unlikely: Vec<Unlikely>,
     pub defaults: Vec<DefaultInForce>,
     /// The scenario, the bands, the weather, as read.
@@ -58,12 +65,37 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             };
             let mut weather = record.series.clone();
             correct_catch(&mut weather, scenario.weather.gauge_multiplier, scenario.snow.rain_snow);
+            let survey = scenario.season.survey_dates[0];
+            let mut drawn_from = weather.clone();
+            let detrended = match scenario.weather.detrend_to {
+                Some(year) => Some(
+                    detrend(&mut drawn_from, survey, year)
+                        .ok_or_else(|| too_short_to_detrend(&weather, &file, shared))?,
+                ),
+                None => None,
+            };
+            let baseline = Baseline::of(&weather, survey);
             let files = vec![file.clone(), bands_file, weather_file];
             let mut unlikely = draft.unlikely;
             unlikely.extend(record.unlikely(basin.is_southern()));
             unlikely.extend(basin.unlikely(scenario.weather.station_elevation_m));
+            unlikely
+                .extend(baseline.iter().flat_map(|baseline| baseline.unlikely(scenario.weather.detrend_to)));
             let defaults = draft.defaults;
-            Ok(Ready { scenario, basin, record, weather, unlikely, defaults, files, stem })
+            let ready = Ready {
+                scenario,
+                basin,
+                record,
+                weather,
+                drawn_from,
+                detrended,
+                baseline,
+                unlikely,
+                defaults,
+                files,
+                stem,
+            };
+            Ok(ready)
         }
         _ => Err(Failure::input(&faults, &file.name, &file.text, shared.is_coloured())),
     }
@@ -100,6 +132,16 @@ fn read_record_of(draft: &Draft, folder: &Path) -> Result<Option<(Record, InputF
     Ok(Some((record, file)))
 }
 
+fn too_short_to_detrend(weather: &Series, file: &InputFile, shared: &Shared) -> Failure {
+    let fault = Fault::key(
+        "weather.detrend_to",
+        format!("a trend asked of {} usable water years", weather.years.len()),
+        format!("at least {LEAST_YEARS}"),
+        "take it out: no trend can be told from so few years",
+    );
+    Failure::input(&[fault], &file.name, &file.text, shared.is_coloured())
+}
+
 fn take<T>(result: Result<T, Vec<Fault>>, faults: &mut Vec<Fault>) -> Option<T> {
     result.map_err(|more| faults.extend(more)).ok()
 }
@@ -131,9 +173,20 @@ impl Ready {
         self.weather.precipitation_mm.iter().sum::<f64>() / self.weather.years.len() as f64
     }
 
-    /// Basin-mean over station precipitation.
-    pub fn precipitation_ratio(&self) -> f64 {
-        self.basin.precipitation_ratio(self.scenario.weather.station_elevation_m)
+    /// Share of the station's precipitation, corrected for catch, that falls as snow at its own temperature.
+    pub fn station_snow_fraction(&self) -> f64 {
+        let phase = self.scenario.snow.rain_snow;
+        let (mut snow_mm, mut all_mm) = (0.0, 0.0);
+        for (amount_mm, mean_c) in self.weather.precipitation_mm.iter().zip(&self.weather.mean_c) {
+            snow_mm += amount_mm * phase.snow_fraction(*mean_c);
+            all_mm += amount_mm;
+        }
+        if all_mm > 0.0 { snow_mm / all_mm } else { 0.0 }
+    }
+
+    /// Elevations of all stations, m.
+    pub fn stations_m(&self) -> Vec<f64> {
+        vec![self.scenario.weather.station_elevation_m]
     }
 
     /// Lanes of every band under each change, and a basin mean for each.

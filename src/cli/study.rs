@@ -103,7 +103,7 @@ fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findi
     let changes: Vec<_> = warming.levels_c.iter().map(|level| warming.warming.at(*level)).collect();
     let lanes = ready.lanes(&changes);
     let generator = YearBlocks {
-        record: &ready.weather,
+        record: &ready.drawn_from,
         seed: scenario.seed,
         years: scenario.realizations.years,
         mean_run_years: scenario.realizations.mean_run_years,

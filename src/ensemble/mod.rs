@@ -1,5 +1,6 @@
 //! Run many: every realization under every warming level, on as many threads as there are.
 
+mod climate;
 mod plan;
 mod realization;
 mod record;
@@ -7,6 +8,7 @@ mod run;
 mod seasons;
 mod watch;
 
+pub use climate::{BandClimate, WinterMonths, band_climates};
 pub use plan::Plan;
 pub use record::{RecordYear, record_years};
 pub use run::run;

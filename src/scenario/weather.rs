@@ -22,6 +22,8 @@ pub struct WeatherTyped {
     pub gauge_multiplier: GaugeMultiplier,
     /// Limits of the screening.
     pub limits: Limits,
+    /// The year to which a trend of temperature is taken out of the years that realizations are drawn from.
+    pub detrend_to: Option<i32>,
 }
 
 impl WeatherTyped {
@@ -69,6 +71,9 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
             "degC from the median of the time of year beyond which a temperature is taken as missing; 25 is common",
         ),
     };
+    let detrend_to =
+        section.has("detrend_to").then(|| section.whole_or("detrend_to", 2005, 1700..=2200) as i32);
+    section.knows("detrend_to");
     section.finish();
     Some(WeatherTyped {
         file: file?,
@@ -81,6 +86,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
         },
         gauge_multiplier: gauge_multiplier?,
         limits,
+        detrend_to,
     })
 }
 

@@ -137,7 +137,7 @@ fn start_and_check() {
     assert_eq!(basin.run("start demo").status, 0);
     let checked = basin.run("check demo/scenarios/alder-fork.toml");
     assert_eq!(checked.status, 0, "{}", checked.stderr);
-    assert!(checked.stdout.contains("default in force"), "{}", checked.stdout);
+    assert!(checked.stdout.contains("Defaults in force"), "{}", checked.stdout);
     basin.write("demo/scenarios/alder-fork.toml", "title = \"mine\"");
     assert_eq!(basin.run("start demo").status, 4);
     assert_eq!(basin.read("demo/scenarios/alder-fork.toml"), "title = \"mine\"");

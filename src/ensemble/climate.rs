@@ -1,0 +1,90 @@
+//! What the record's weather is like band by band, as observed: winter against freezing, snow against rain.
+
+use crate::season::{is_seasonal, longest_cover_days};
+use crate::snow::{Engine, Lanes, OpenLedger};
+use crate::weather::Series;
+use serde::Serialize;
+
+/// The three months of winter, 0 for January.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub struct WinterMonths(pub [u8; 3]);
+
+impl WinterMonths {
+    /// December to February in the north, June to August in the south.
+    pub fn of(is_southern: bool) -> Self {
+        Self(if is_southern { [5, 6, 7] } else { [11, 0, 1] })
+    }
+}
+
+/// The record's climate in one band; means over its usable years.
+#[derive(Debug, Clone, Copy, Default, PartialEq, Serialize)]
+pub struct BandClimate {
+    /// Mean temperature of the three winter months, degC.
+    pub winter_mean_c: f64,
+    /// Share of winter days with a mean below 0 degC, 0 to 1.
+    pub winter_freezing_share: f64,
+    /// Precipitation of a year, mm.
+    pub precipitation_mm: f64,
+    /// Snowfall of a year, mm.
+    pub snowfall_mm: f64,
+    /// Years with a cover of at least 60 days on end.
+    pub seasonal_years: usize,
+    /// Years whose snow is not gone at their end.
+    pub years_ending_with_snow: usize,
+}
+
+impl BandClimate {
+    /// Share of precipitation that falls as snow; none without precipitation.
+    pub fn snow_fraction(&self) -> Option<f64> {
+        (self.precipitation_mm > 0.0).then(|| self.snowfall_mm / self.precipitation_mm)
+    }
+}
+
+/// Runs the record through lanes that hold one level, and looks at each band. Years after a gap start bare.
+///
+/// # Errors
+/// A ledger that does not close.
+pub fn band_climates(
+    lanes: &Lanes,
+    weather: &Series,
+    winter: WinterMonths,
+) -> Result<Vec<BandClimate>, OpenLedger> {
+    let mut engine = Engine::new(lanes, true);
+    let mut climates = vec![BandClimate::default(); lanes.count()];
+    let mut winter_days = 0;
+    for span in &weather.years {
+        if !span.follows {
+            engine.restart();
+        }
+        let view = weather.view(span);
+        let block = engine.year(view)?;
+        for (band, climate) in climates.iter_mut().enumerate() {
+            let column = lanes.column(0, band);
+            climate.seasonal_years += usize::from(is_seasonal(longest_cover_days(block, column)));
+            let end_mm = block.swe_mm[block.days * block.width + column];
+            climate.years_ending_with_snow += usize::from(end_mm >= crate::season::BARE_MM);
+        }
+        let Some(detail) = &block.detail else { continue };
+        for (day, month) in view.month.iter().enumerate() {
+            let is_winter = winter.0.contains(month);
+            winter_days += usize::from(is_winter);
+            for (band, climate) in climates.iter_mut().enumerate() {
+                let at = day * detail.width + lanes.column(0, band);
+                climate.precipitation_mm += detail.rain_mm[at] + detail.snow_mm[at];
+                climate.snowfall_mm += detail.snow_mm[at];
+                if is_winter {
+                    climate.winter_mean_c += detail.mean_c[at];
+                    climate.winter_freezing_share += f64::from(u8::from(detail.mean_c[at] < 0.0));
+                }
+            }
+        }
+    }
+    let (years, winter_days) = (weather.years.len() as f64, winter_days as f64);
+    for climate in &mut climates {
+        climate.precipitation_mm /= years;
+        climate.snowfall_mm /= years;
+        climate.winter_mean_c /= winter_days;
+        climate.winter_freezing_share /= winter_days;
+    }
+    Ok(climates)
+}

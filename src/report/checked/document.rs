@@ -1,0 +1,133 @@
+//! The check as one JSON document; all of its numbers are metric.
+
+use super::super::SCHEMA_VERSION;
+use super::Checked;
+use crate::baseline::{Baseline, Detrended, wilson};
+use crate::basin::{Band, BeyondStations};
+use crate::ensemble::BandClimate;
+use crate::perturb::Warming;
+use crate::season::SeasonSettings;
+use crate::snow::{GaugeMultiplier, SnowParams};
+use crate::weather::{Counts, Means, SkippedYear, Suspicion};
+use serde::Serialize;
+
+#[derive(Serialize)]
+struct Document<'a> {
+    schema_version: u32,
+    program: &'static str,
+    status: &'static str,
+    title: &'a str,
+    seed: u64,
+    record: &'a Counts,
+    suspicious: &'a [Suspicion],
+    water_years_in_use: Vec<i32>,
+    water_years_left_out: &'a [SkippedYear],
+    station_means_as_caught: Means,
+    cool_season: Season,
+    warm_season: Season,
+    gauge_multiplier: GaugeMultiplier,
+    station_precipitation_mm_per_year: f64,
+    basin_precipitation_mm_per_year: f64,
+    station_snow_fraction: f64,
+    basin_snow_fraction: Option<f64>,
+    basin_area_km2: f64,
+    area_beyond_stations: Option<BeyondStations>,
+    bands: Vec<BandDocument<'a>>,
+    baseline: Option<&'a Baseline>,
+    detrended: Option<&'a Detrended>,
+    season: &'a SeasonSettings,
+    snow: &'a SnowParams,
+    is_fitted: bool,
+    levels_c: &'a [f64],
+    reference_c: f64,
+    warming: &'a Warming,
+    defaults_in_force: Vec<DefaultDocument<'a>>,
+    unlikely: Vec<String>,
+}
+
+#[derive(Serialize)]
+struct Season {
+    mean_c: Option<f64>,
+    precipitation_mm: Option<f64>,
+}
+
+#[derive(Serialize)]
+struct BandDocument<'a> {
+    #[serde(flatten)]
+    band: &'a Band,
+    area_share: f64,
+    #[serde(flatten)]
+    climate: &'a BandClimate,
+    snow_fraction: Option<f64>,
+    seasonal_years_share_wilson_95: Option<[f64; 2]>,
+}
+
+#[derive(Serialize)]
+struct DefaultDocument<'a> {
+    key: &'a str,
+    value: &'a str,
+}
+
+impl Checked<'_> {
+    /// The document.
+    pub fn document(&self) -> impl Serialize + '_ {
+        let mean = |values: &[(i32, f64)]| {
+            (!values.is_empty())
+                .then(|| values.iter().map(|(_, value)| value).sum::<f64>() / values.len() as f64)
+        };
+        let season = |years: &crate::baseline::SeasonYears| Season {
+            mean_c: mean(&years.mean_c),
+            precipitation_mm: mean(&years.precipitation_mm),
+        };
+        let years = self.record.series.years.len();
+        let bands = self.basin.bands.iter().zip(self.basin.shares()).zip(self.climates);
+        Document {
+            schema_version: SCHEMA_VERSION,
+            program: "thawline",
+            status: "checked",
+            title: self.title,
+            seed: self.seed,
+            record: &self.record.counts,
+            suspicious: &self.record.suspicions,
+            water_years_in_use: self.record.series.years.iter().map(|year| year.water_year).collect(),
+            water_years_left_out: &self.record.skipped,
+            station_means_as_caught: self.record.means(),
+            cool_season: season(&self.seasons.cool),
+            warm_season: season(&self.seasons.warm),
+            gauge_multiplier: self.gauge_multiplier,
+            station_precipitation_mm_per_year: self.station_precipitation_mm,
+            basin_precipitation_mm_per_year: self.station_precipitation_mm * self.precipitation_ratio(),
+            station_snow_fraction: self.station_snow_fraction,
+            basin_snow_fraction: self.basin_snow_fraction(),
+            basin_area_km2: self.basin.area_km2(),
+            area_beyond_stations: self.beyond_stations,
+            bands: bands
+                .map(|((band, area_share), climate)| BandDocument {
+                    band,
+                    area_share,
+                    climate,
+                    snow_fraction: climate.snow_fraction(),
+                    seasonal_years_share_wilson_95: wilson(climate.seasonal_years, years),
+                })
+                .collect(),
+            baseline: self.baseline,
+            detrended: self.detrended,
+            season: self.season,
+            snow: self.snow,
+            is_fitted: false,
+            levels_c: self.levels_c,
+            reference_c: self.levels_c[self.reference],
+            warming: self.warming,
+            defaults_in_force: self
+                .defaults
+                .iter()
+                .map(|(key, value)| DefaultDocument { key, value })
+                .collect(),
+            unlikely: self
+                .unlikely
+                .iter()
+                .map(|notice| format!("{}: {}", notice.about, notice.why))
+                .collect(),
+        }
+    }
+}

@@ -1,0 +1,177 @@
+//! What `check` found: a page of words for the terminal, or one JSON document.
+
+mod baseline;
+mod document;
+mod elevation;
+mod record;
+
+use super::numbers::{counted, fixed, signed};
+use super::reader::Reader;
+use crate::baseline::{Baseline, Detrended, Seasons};
+use crate::basin::{Basin, BeyondStations};
+use crate::ensemble::BandClimate;
+use crate::fault::Unlikely;
+use crate::perturb::Warming;
+use crate::season::SeasonSettings;
+use crate::snow::{GaugeMultiplier, SnowParams};
+use crate::weather::Record;
+use std::fmt::Write;
+
+/// Everything a check has read and found.
+pub struct Checked<'a> {
+    /// The study's title.
+    pub title: &'a str,
+    /// Seed in force.
+    pub seed: u64,
+    /// Who reads it.
+    pub reader: Reader,
+    /// The basin.
+    pub basin: &'a Basin,
+    /// Elevation of the station, m.
+    pub station_elevation_m: f64,
+    /// Area beyond the stations.
+    pub beyond_stations: Option<BeyondStations>,
+    /// The record as caught.
+    pub record: &'a Record,
+    /// Gauge catch.
+    pub gauge_multiplier: GaugeMultiplier,
+    /// Precipitation of a year at the station, corrected for catch, mm.
+    pub station_precipitation_mm: f64,
+    /// Share of it that falls as snow at the station, 0 to 1.
+    pub station_snow_fraction: f64,
+    /// The record's seasons, precipitation corrected for catch.
+    pub seasons: &'a Seasons,
+    /// The record band by band, from the lowest.
+    pub climates: &'a [BandClimate],
+    /// Trends and steps, precipitation corrected for catch.
+    pub baseline: Option<&'a Baseline>,
+    /// The trend that was taken out for the realizations.
+    pub detrended: Option<&'a Detrended>,
+    /// Dates and windows.
+    pub season: &'a SeasonSettings,
+    /// Snow parameters.
+    pub snow: &'a SnowParams,
+    /// Levels, ascending, degC.
+    pub levels_c: &'a [f64],
+    /// Which of them is the reference.
+    pub reference: usize,
+    /// Shape and precipitation.
+    pub warming: &'a Warming,
+    /// Defaults in force, `(key, value)`.
+    pub defaults: Vec<(&'a str, &'a str)>,
+    /// What is unlikely.
+    pub unlikely: &'a [Unlikely],
+}
+
+/// Names stand in a column of this width.
+const NAME_WIDTH: usize = 27;
+/// Lines are broken before they reach this width, where a blank allows it.
+const PAGE_WIDTH: usize = 110;
+
+/// A page of headed lines.
+#[derive(Default)]
+struct Page {
+    text: String,
+}
+
+impl Page {
+    fn head(&mut self, title: &str) {
+        let gap = if self.text.is_empty() { "" } else { "\n" };
+        let _ = writeln!(self.text, "{gap}{title}");
+    }
+
+    /// A name and what there is to say of it, on as many lines as that takes.
+    fn line(&mut self, name: &str, what: impl AsRef<str>) {
+        let mut name = name;
+        let mut rest = what.as_ref();
+        loop {
+            let (line, after) = broken(rest, PAGE_WIDTH - NAME_WIDTH - 2);
+            let _ = writeln!(self.text, "{}", format!("  {name:<NAME_WIDTH$}{line}").trim_end());
+            if after.is_empty() {
+                return;
+            }
+            (name, rest) = ("", after);
+        }
+    }
+
+    /// A paragraph, its further lines set in.
+    fn paragraph(&mut self, text: &str) {
+        let (mut indent, mut rest) = ("  ", text);
+        while !rest.is_empty() {
+            let (line, after) = broken(rest, PAGE_WIDTH - indent.len());
+            let _ = writeln!(self.text, "{indent}{line}");
+            (indent, rest) = ("    ", after);
+        }
+    }
+}
+
+/// The longest beginning of a text that ends at a blank and fits into `width` characters, and the rest.
+fn broken(text: &str, width: usize) -> (&str, &str) {
+    let Some((limit, _)) = text.char_indices().nth(width) else { return (text, "") };
+    match text[..limit].rfind(' ').or_else(|| text.find(' ')) {
+        Some(blank) => (&text[..blank], &text[blank + 1..]),
+        None => (text, ""),
+    }
+}
+
+impl Checked<'_> {
+    /// The page of words, for the terminal.
+    pub fn words(&self) -> String {
+        let mut page = Page::default();
+        page.head(self.title);
+        self.write_record(&mut page);
+        self.write_precipitation(&mut page);
+        self.write_elevation(&mut page);
+        self.write_baseline(&mut page);
+        self.write_levels(&mut page);
+        page.head("Snow model");
+        page.line("fitted", "no: its parameters are not fitted to observed snow");
+        page.head(&format!("Defaults in force: {}", self.defaults.len()));
+        for (key, value) in &self.defaults {
+            page.paragraph(&format!("{key} = {value}"));
+        }
+        page.head(&match self.unlikely.len() {
+            0 => "Worth a second look: nothing".to_owned(),
+            count => format!("Worth a second look: {}", counted(count, "thing")),
+        });
+        for notice in self.unlikely {
+            page.paragraph(&format!("{}: {}", notice.about, notice.why));
+        }
+        page.text
+    }
+
+    fn write_levels(&self, page: &mut Page) {
+        page.head("Warming");
+        let names: Vec<String> = self.levels_c.iter().map(|level_c| self.reader.level(*level_c)).collect();
+        page.line("levels", names.join(", "));
+        page.line("reference", &names[self.reference]);
+        if let Some(global) = self.warming.global {
+            let of_each = self.levels_c.iter().zip(&names).map(|(level_c, name)| {
+                format!("{name} here is {} of global warming", self.reader.level(global.global_c(*level_c)))
+            });
+            page.line("  as global warming", of_each.collect::<Vec<_>>().join("; "));
+        }
+        let changes: Vec<f64> = self
+            .levels_c
+            .iter()
+            .map(|level_c| {
+                let factor = self.warming.precipitation.factor(*level_c);
+                100.0 * (factor.iter().sum::<f64>() / 12.0 - 1.0)
+            })
+            .collect();
+        if changes.iter().all(|change| *change == 0.0) {
+            page.line("precipitation", "the same at every level");
+        } else {
+            let of_each =
+                names.iter().zip(changes).map(|(name, change)| format!("{} % at {name}", signed(change, 1)));
+            page.line(
+                "precipitation",
+                format!("mean of the months: {}", of_each.collect::<Vec<_>>().join(", ")),
+            );
+        }
+    }
+
+    fn percent(share: f64) -> String {
+        format!("{} %", fixed(100.0 * share, 0))
+    }
+}
