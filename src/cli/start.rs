@@ -11,7 +11,7 @@ pub(super) fn run(folder: &Path, shared: &Shared) -> Result<(), Failure> {
     let failed = |path: &Path, error: std::io::Error| {
         Failure::FileSystem(format!("cannot write {}: {error}", path.display()))
     };
-    let files = crate::demo::files();
+    let files = crate::demo::files().map_err(|open| Failure::Ours(open.to_string()))?;
     let differs = |path: &Path, content: &str| fs::read(path).is_ok_and(|there| there != content.as_bytes());
     if let Some((name, _)) = files.iter().find(|(name, content)| differs(&folder.join(name), content))
         && !shared.force

@@ -7,14 +7,14 @@ use std::fmt::Write;
 pub fn table(place: &Place) -> String {
     let mut text = format!(
         "# {}: INVENTED area-elevation table of a demo; no such basin exists\n\
-         # elevations in m, areas in km2\n\
-         lower_m,upper_m,area_km2\n",
-        place.basin
+         # {}\n\
+         {}\n",
+        place.basin, place.layout.bands_remark, place.layout.bands_header
     );
-    for (band, area_km2) in place.band_areas_km2.iter().enumerate() {
-        let lower_m = place.lowest_m + band as u32 * place.band_height_m;
-        let upper_m = lower_m + place.band_height_m;
-        let _ = writeln!(text, "{lower_m},{upper_m},{area_km2:.1}");
+    for (band, area) in place.band_areas.iter().enumerate() {
+        let lower = place.lowest + band as u32 * place.band_height;
+        let upper = lower + place.band_height;
+        let _ = writeln!(text, "{lower},{upper},{area:.1}");
     }
     text
 }

@@ -1,18 +1,23 @@
 //! Frostbell Creek: high, cold and continental, with precipitation all year.
 
+use super::layout::Layout;
 use super::place::{Climate, Hole, Place, YearToYear, gap};
-use super::swing::Swing;
+use super::swing::{NORTHERN_MIDWINTER_DAY, Swing};
 
 /// The cold demo: winter lies so far below freezing that years differ more by what falls than by what melts.
 pub const PLACE: Place = Place {
     basin: "Frostbell Creek",
+    latitude_deg: 43.6,
+    water_year_starts: (10, 1),
+    layout: Layout::METRIC,
     station: "Harrow Bench",
-    station_m: 2960,
-    lowest_m: 2700,
-    band_height_m: 150,
-    band_areas_km2: &[9.0, 21.0, 36.0, 47.0, 51.0, 44.0, 31.0, 17.0, 6.0],
+    station_m: 2960.0,
+    lowest: 2700,
+    band_height: 150,
+    band_areas: &[9.0, 21.0, 36.0, 47.0, 51.0, 44.0, 31.0, 17.0, 6.0],
     climate: Climate {
         seed: 12,
+        midwinter_day: NORTHERN_MIDWINTER_DAY,
         mean_c: Swing::between(-11.0, 12.0),
         residual_sd_c: Swing::between(4.7, 2.5),
         residual_lag1: 0.68,

@@ -1,26 +1,66 @@
 //! What an invented place is made of: plain numbers, and nothing that would need measuring.
 
+use super::layout::Layout;
 use super::swing::Swing;
+use chrono::NaiveDate;
 
-/// A basin, its station and the holes in the station's record.
+/// Calendar year in which every record begins, with the place's water year.
+pub const FIRST_YEAR: i32 = 1984;
+/// Calendar year in which it ends, on the eve of a water year: forty of them.
+pub const LAST_YEAR: i32 = 2024;
+
+/// A basin, its station and the holes in the records of the station and of a snow site.
 #[derive(Debug)]
 pub struct Place {
     /// Name of the basin.
     pub basin: &'static str,
+    /// Latitude of the basin, degrees, positive north.
+    pub latitude_deg: f64,
+    /// Month and day on which its water years start.
+    pub water_year_starts: (u32, u32),
+    /// How its agency writes files.
+    pub layout: Layout,
     /// Name of the station.
     pub station: &'static str,
     /// Elevation of the station, m.
-    pub station_m: u32,
-    /// Lower edge of the lowest band, m.
-    pub lowest_m: u32,
-    /// Height of every band, m.
-    pub band_height_m: u32,
-    /// Area of each band from the lowest up, km2.
-    pub band_areas_km2: &'static [f64],
+    pub station_m: f64,
+    /// Lower edge of the lowest band, in the layout's unit of elevation.
+    pub lowest: u32,
+    /// Height of every band, in the same unit.
+    pub band_height: u32,
+    /// Area of each band from the lowest up, in the layout's unit of area.
+    pub band_areas: &'static [f64],
     /// The station's weather.
     pub climate: Climate,
     /// What was not measured.
     pub gaps: &'static [Gap],
+}
+
+impl Place {
+    /// First day of the water year that starts in a calendar year.
+    pub fn start_in(&self, calendar_year: i32) -> NaiveDate {
+        let (month, day) = self.water_year_starts;
+        date((calendar_year, month, day))
+    }
+
+    /// Every day of the record.
+    pub fn dates(&self) -> impl Iterator<Item = NaiveDate> {
+        let end = self.start_in(LAST_YEAR);
+        self.start_in(FIRST_YEAR).iter_days().take_while(move |date| *date < end)
+    }
+
+    /// Whether one of these holes was cut on a day.
+    pub fn is_lost(&self, day: NaiveDate, holes: &[Hole]) -> bool {
+        self.gaps.iter().any(|gap| {
+            let age = (day - date(gap.from)).num_days();
+            holes.contains(&gap.hole) && (0..gap.days).contains(&age)
+        })
+    }
+}
+
+/// The dates of the demo all exist; one that does not would show as the calendar's first day.
+fn date((year, month, day): (i32, u32, u32)) -> NaiveDate {
+    NaiveDate::from_ymd_opt(year, month, day).unwrap_or(NaiveDate::MIN)
 }
 
 /// The weather of a station, before what makes one year differ from another. Monthly tables start with January.
@@ -28,6 +68,8 @@ pub struct Place {
 pub struct Climate {
     /// Seed of all its draws.
     pub seed: u64,
+    /// Day of the year on which the winter values of its swings are reached.
+    pub midwinter_day: f64,
     /// Daily mean temperature, degC.
     pub mean_c: Swing,
     /// Standard deviation of a day's mean temperature about it, degC.
@@ -69,7 +111,7 @@ pub struct YearToYear {
     pub warmth_sd_c: f64,
 }
 
-/// Cells of a station's file that were not measured.
+/// Cells of a file that were not measured.
 #[derive(Debug)]
 pub struct Gap {
     /// First day: year, month, day.
@@ -80,7 +122,7 @@ pub struct Gap {
     pub hole: Hole,
 }
 
-/// Which cells of a day are empty.
+/// Which cells of a day are lost.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub enum Hole {
     /// The minimum alone.
@@ -91,8 +133,10 @@ pub enum Hole {
     Temperatures,
     /// Precipitation.
     Precipitation,
-    /// The whole day.
+    /// The station's whole day.
     All,
+    /// The water in the snow at the snow site.
+    SnowWater,
 }
 
 /// A hole of `days` days from the day `from`.

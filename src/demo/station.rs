@@ -1,51 +1,51 @@
 //! The invented station's file, as an agency would hand it out: remarks, a header, a line a day, and holes.
 
-use super::place::{Gap, Hole, Place};
-use super::weather::{Day, draw};
-use chrono::NaiveDate;
+use super::layout::Gauge;
+use super::place::{Hole, Place};
+use super::weather::draw;
+use chrono::Datelike;
 use std::fmt::Write;
 
-/// First day of the record.
-const FIRST: (i32, u32, u32) = (1984, 10, 1);
-/// The day after its last: forty water years.
-const END: (i32, u32, u32) = (2024, 10, 1);
+/// Decimals of temperatures.
+const TEMPERATURE_DECIMALS: u32 = 1;
 
-/// The daily weather of a place's station as a text table. A cell that was not measured is empty.
+/// The daily weather of a place's station as a text table.
 pub fn table(place: &Place) -> String {
+    let layout = &place.layout;
     let mut text = format!(
-        "# {station} station, {elevation} m, in the basin of {basin}: INVENTED for a demo by a random weather generator\n\
-         # no such station exists and nothing here was measured; do not use these numbers for anything real\n\
-         # daily minimum and maximum in degC, daily precipitation as caught by the gauge in mm, empty: not measured\n\
-         date,tmin_c,tmax_c,precip_mm\n",
+        "{remark} {station} station, {elevation}, in the basin of {basin}: INVENTED for a demo by a random weather \
+         generator\n\
+         {remark} no such station exists and nothing here was measured; do not use these numbers for anything \
+         real\n\
+         {remark} {columns}\n\
+         {header}\n",
+        remark = layout.remark,
         station = place.station,
-        elevation = place.station_m,
+        elevation = layout.elevation(place.station_m),
         basin = place.basin,
+        columns = layout.weather_remark,
+        header = layout.weather_header,
     );
-    for day in draw(&place.climate, date(FIRST), date(END)) {
-        write_day(&mut text, &day, place.gaps);
+    let mut in_gauge_mm = 0.0;
+    for day in draw(place) {
+        let is_emptied = match layout.gauge {
+            Gauge::Daily => true,
+            Gauge::SinceWaterYearBegan => day.date == place.start_in(day.date.year()),
+        };
+        in_gauge_mm = day.precipitation_mm + if is_emptied { 0.0 } else { in_gauge_mm };
+        let temperature = |value_c: f64, hole: Hole| {
+            let is_lost = place.is_lost(day.date, &[hole, Hole::Temperatures, Hole::All]);
+            layout.cell(layout.temperature(value_c), TEMPERATURE_DECIMALS, is_lost)
+        };
+        let is_gauge_lost = place.is_lost(day.date, &[Hole::Precipitation, Hole::All]);
+        let _ = writeln!(
+            text,
+            "{},{},{},{}",
+            layout.date(day.date),
+            temperature(day.tmin_c, Hole::Minimum),
+            temperature(day.tmax_c, Hole::Maximum),
+            layout.cell(layout.depth(in_gauge_mm), layout.precipitation_decimals, is_gauge_lost),
+        );
     }
     text
-}
-
-fn write_day(text: &mut String, day: &Day, gaps: &[Gap]) {
-    let is_lost = |holes: &[Hole]| {
-        gaps.iter().any(|gap| {
-            let age = (day.date - date(gap.from)).num_days();
-            holes.contains(&gap.hole) && (0..gap.days).contains(&age)
-        })
-    };
-    let tmin = cell(day.tmin_c, is_lost(&[Hole::Minimum, Hole::Temperatures, Hole::All]));
-    let tmax = cell(day.tmax_c, is_lost(&[Hole::Maximum, Hole::Temperatures, Hole::All]));
-    let precipitation = cell(day.precipitation_mm, is_lost(&[Hole::Precipitation, Hole::All]));
-    let _ = writeln!(text, "{},{tmin},{tmax},{precipitation}", day.date);
-}
-
-/// One decimal, never `-0.0`.
-fn cell(value: f64, is_lost: bool) -> String {
-    if is_lost { String::new() } else { format!("{:.1}", (value * 10.0).round() / 10.0 + 0.0) }
-}
-
-/// The dates of the demo all exist; one that does not would show as the calendar's first day.
-fn date((year, month, day): (i32, u32, u32)) -> NaiveDate {
-    NaiveDate::from_ymd_opt(year, month, day).unwrap_or(NaiveDate::MIN)
 }

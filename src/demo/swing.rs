@@ -5,11 +5,12 @@ use std::f64::consts::TAU;
 /// Mean length of a year, days.
 const YEAR_DAYS: f64 = 365.25;
 
-/// Day of the year on which the winter value is reached: 20 January, a month after the shortest day, as air
-/// temperature lags behind the sun. The summer value stands half a year later.
-const WINTER_DAY: f64 = 20.0;
+/// Midwinter in the north: 20 January, a month after the shortest day, as air temperature lags behind the sun.
+pub const NORTHERN_MIDWINTER_DAY: f64 = 20.0;
+/// Midwinter in the south: 21 July.
+pub const SOUTHERN_MIDWINTER_DAY: f64 = 202.0;
 
-/// A number that changes along a cosine between its value on 20 January and its value on 21 July.
+/// A number that changes along a cosine between its value in midwinter and its value half a year later.
 #[derive(Debug, Clone, Copy)]
 pub struct Swing {
     /// Value in midwinter.
@@ -24,9 +25,9 @@ impl Swing {
         Self { winter, summer }
     }
 
-    /// Value on a day of the year, 1 to 366.
-    pub fn at(self, day_of_year: u32) -> f64 {
-        let turn = (f64::from(day_of_year) - WINTER_DAY) / YEAR_DAYS * TAU;
+    /// Value so many days after midwinter, of any sign.
+    pub fn at(self, days_after_midwinter: f64) -> f64 {
+        let turn = days_after_midwinter / YEAR_DAYS * TAU;
         (self.winter + self.summer) / 2.0 + (self.winter - self.summer) / 2.0 * libm::cos(turn)
     }
 }

@@ -3,7 +3,7 @@
 //! All of it is common practice in weather generators: the wet/dry chain and temperatures conditional on it follow
 //! Richardson (1981). It is kept simple, since it has to look like a mountain station and not to be fitted to one.
 
-use super::place::{Climate, YearToYear};
+use super::place::{Climate, FIRST_YEAR, Place, YearToYear};
 use crate::perturb::stream;
 use chrono::{Datelike, NaiveDate};
 use rand::RngExt;
@@ -50,15 +50,16 @@ struct Yesterday {
     residual: f64,
 }
 
-/// Draws every day from `first` to the day before `end`; water years start on 1 October.
-pub fn draw(climate: &Climate, first: NaiveDate, end: NaiveDate) -> Vec<Day> {
+/// Draws every day of a place's record; a mood lasts a water year.
+pub fn draw(place: &Place) -> Vec<Day> {
+    let climate = &place.climate;
     let mut year_draws = stream(climate.seed, YEARS_STREAM);
     let mut day_draws = stream(climate.seed, DAYS_STREAM);
     let mut mood = first_mood(&climate.year_to_year, &mut year_draws);
     let mut yesterday = Yesterday { is_wet: false, residual: 0.0 };
     let mut days = Vec::new();
-    for date in first.iter_days().take_while(|date| *date < end) {
-        if (date.month(), date.day()) == (10, 1) && date > first {
+    for date in place.dates() {
+        if date.year() > FIRST_YEAR && date == place.start_in(date.year()) {
             mood = next_mood(mood, &climate.year_to_year, &mut year_draws);
         }
         days.push(draw_day(climate, date, mood, &mut yesterday, &mut day_draws));
@@ -87,7 +88,7 @@ fn draw_day(
     yesterday: &mut Yesterday,
     random: &mut ChaCha8Rng,
 ) -> Day {
-    let day = date.ordinal();
+    let day = f64::from(date.ordinal()) - climate.midwinter_day;
     let month = date.month0() as usize;
     let wetness = mood.wetness * climate.year_to_year.wetness_weight.at(day);
 

@@ -1,6 +1,6 @@
 //! What the record's weather is like band by band, as observed: winter against freezing, snow against rain.
 
-use crate::season::{is_seasonal, longest_cover_days};
+use crate::season::{is_seasonal, keeps_snow, longest_cover_days};
 use crate::snow::{Engine, Lanes, OpenLedger};
 use crate::weather::Series;
 use serde::Serialize;
@@ -29,8 +29,8 @@ pub struct BandClimate {
     pub snowfall_mm: f64,
     /// Years with a cover of at least 60 days on end.
     pub seasonal_years: usize,
-    /// Years whose snow is not gone at their end.
-    pub years_ending_with_snow: usize,
+    /// Years in which the snow never went after its peak.
+    pub years_not_gone: usize,
 }
 
 impl BandClimate {
@@ -61,8 +61,7 @@ pub fn band_climates(
         for (band, climate) in climates.iter_mut().enumerate() {
             let column = lanes.column(0, band);
             climate.seasonal_years += usize::from(is_seasonal(longest_cover_days(block, column)));
-            let end_mm = block.swe_mm[block.days * block.width + column];
-            climate.years_ending_with_snow += usize::from(end_mm >= crate::season::BARE_MM);
+            climate.years_not_gone += usize::from(keeps_snow(block, column));
         }
         let Some(detail) = &block.detail else { continue };
         for (day, month) in view.month.iter().enumerate() {

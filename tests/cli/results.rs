@@ -135,9 +135,16 @@ fn the_daily_table() {
 fn start_and_check() {
     let basin = Basin::new();
     assert_eq!(basin.run("start demo").status, 0);
-    let checked = basin.run("check demo/scenarios/alder-fork.toml");
-    assert_eq!(checked.status, 0, "{}", checked.stderr);
-    assert!(checked.stdout.contains("Defaults in force"), "{}", checked.stdout);
+    for scenario in ["alder-fork", "frostbell-creek", "tamsin-river"] {
+        let checked = basin.run(&format!("check demo/scenarios/{scenario}.toml"));
+        assert_eq!(checked.status, 0, "{}", checked.stderr);
+        assert!(checked.stdout.contains("Defaults in force: "), "{}", checked.stdout);
+        assert!(
+            checked.stdout.ends_with("Worth a second look: nothing\n") && checked.stderr.is_empty(),
+            "{}",
+            checked.stderr
+        );
+    }
     basin.write("demo/scenarios/alder-fork.toml", "title = \"mine\"");
     assert_eq!(basin.run("start demo").status, 4);
     assert_eq!(basin.read("demo/scenarios/alder-fork.toml"), "title = \"mine\"");

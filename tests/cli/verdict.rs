@@ -10,9 +10,10 @@ fn study(basin: &Basin, scenario: &str) -> (Value, String) {
 }
 
 /// In the cold demo basin +1 degC moves 1 April SWE by less than the half spread, and the briefing says so; in the main
-/// demo warming outweighs before +2 degC, and the briefing says that.
+/// demo warming outweighs before +2 degC, and the briefing says that; in the southern one a degree takes more of the
+/// snow than in either.
 #[test]
-fn both_demos_speak_for_their_numbers() {
+fn the_demos_speak_for_their_numbers() {
     let basin = Basin::new();
     assert_eq!(basin.run("start demo --quiet").status, 0);
     let (cold, page) = study(&basin, "demo/scenarios/frostbell-creek.toml");
@@ -47,6 +48,14 @@ fn both_demos_speak_for_their_numbers() {
         main["record"]["headline_by_year"].as_array().unwrap().iter().map(|y| y["value"].as_f64().unwrap());
     let (count, sum) = mean.fold((0.0, 0.0), |(count, sum), value| (count + 1.0, sum + value));
     assert!((300.0..600.0).contains(&(sum / count)), "mean 1 April SWE {}", sum / count);
+
+    let (south, _) = study(&basin, "demo/scenarios/tamsin-river.toml");
+    hold_to_definitions(&south);
+    assert_eq!(south["findings"]["basin"][0]["measure"]["name"], "swe_10_01_mm");
+    let percent =
+        |study: &Value| study["findings"]["basin"][0]["levels"][1]["percent_change"].as_f64().unwrap();
+    let [cold, main, south] = [&cold, &main, &south].map(percent);
+    assert!(south < 1.5 * main && main < 1.5 * cold && cold < 0.0, "{cold}, {main}, {south} % at +1 degC");
 }
 
 /// Where the assumed change of mean precipitation is wide enough, precipitation outweighs the same warming in the same

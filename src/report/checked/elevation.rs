@@ -106,13 +106,11 @@ impl Checked<'_> {
             .climates
             .iter()
             .enumerate()
-            .filter(|(_, climate)| climate.years_ending_with_snow > 0)
-            .map(|(at, climate)| {
-                format!("band {} in {}", at + 1, counted(climate.years_ending_with_snow, "year"))
-            })
+            .filter(|(_, climate)| climate.years_not_gone > 0)
+            .map(|(at, climate)| format!("band {} in {}", at + 1, counted(climate.years_not_gone, "year")))
             .collect();
         if !perennial.is_empty() {
-            page.line("snow at the year's end", perennial.join(", "));
+            page.line("snow that never went", perennial.join(", "));
         }
     }
 }

@@ -52,7 +52,7 @@ impl Checked<'_> {
             page.line(
                 "accumulating gauge",
                 format!(
-                    "set back {}; {} ({} in all) taken for noise; {} between missing readings, not run",
+                    "set back {}; {} (in all {}) taken for noise; {} between missing readings, not run",
                     times(gauge.resets),
                     counted(gauge.small_falls, "small fall"),
                     self.reader.amount(gauge.small_falls_mm),
