@@ -11,6 +11,7 @@ mod study;
 mod summary;
 mod tables;
 mod terms;
+mod trends;
 mod words;
 
 pub use briefing::briefing_html;

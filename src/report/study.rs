@@ -1,7 +1,8 @@
 //! Everything a report is made of, gathered by the command that ran the study.
 
 use super::reader::Reader;
-use crate::basin::Basin;
+use crate::baseline::{Baseline, Detrended};
+use crate::basin::{Basin, BeyondStations};
 use crate::ensemble::RecordYear;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
@@ -21,6 +22,8 @@ pub struct Study<'a> {
     pub basin: &'a Basin,
     /// Elevation of the station, m.
     pub station_elevation_m: f64,
+    /// Area of the basin beyond its stations.
+    pub beyond_stations: Option<BeyondStations>,
     /// Gauge catch.
     pub gauge_multiplier: GaugeMultiplier,
     /// Dates and windows.
@@ -57,6 +60,10 @@ pub struct Record<'a> {
     pub measures: &'a [Measure],
     /// Mean yearly precipitation at the station after the catch correction, mm.
     pub mean_precipitation_mm: f64,
+    /// Trends and steps.
+    pub baseline: Option<&'a Baseline>,
+    /// The trend that was taken out of the years that realizations are drawn from.
+    pub detrended: Option<&'a Detrended>,
 }
 
 impl Record<'_> {

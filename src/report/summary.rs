@@ -3,6 +3,8 @@
 use super::SCHEMA_VERSION;
 use super::study::{Input, Origin, Study};
 use super::words::Answer;
+use crate::baseline::{Baseline, Detrended};
+use crate::basin::BeyondStations;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
 use crate::perturb::Warming;
@@ -41,6 +43,7 @@ struct BasinSummary {
     highest_m: f64,
     precipitation_over_station: f64,
     mean_precipitation_mm: f64,
+    area_beyond_stations: Option<BeyondStations>,
 }
 
 #[derive(Serialize)]
@@ -53,6 +56,8 @@ struct RecordSummary<'a> {
     headline_mean: Option<f64>,
     headline_coefficient_of_variation: Option<f64>,
     headline_by_year: Vec<HeadlineYear>,
+    baseline: Option<&'a Baseline>,
+    detrended: Option<&'a Detrended>,
 }
 
 #[derive(Serialize)]
@@ -88,6 +93,7 @@ pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Ve
             highest_m: basin.bands.last().map_or(0.0, |band| band.upper_m),
             precipitation_over_station: ratio,
             mean_precipitation_mm: ratio * study.record.mean_precipitation_mm,
+            area_beyond_stations: study.beyond_stations,
         },
         record: RecordSummary {
             counts: study.record.counts,
@@ -97,6 +103,8 @@ pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Ve
             headline_mean: mean_and_variation.map(|[mean, _]| mean),
             headline_coefficient_of_variation: mean_and_variation.map(|[_, variation]| variation),
             headline_by_year: study.record.years.iter().map(headline).collect(),
+            baseline: study.record.baseline,
+            detrended: study.record.detrended,
         },
         findings: study.findings,
     })
@@ -132,6 +140,7 @@ struct Parameters<'a> {
     levels_c: &'a [f64],
     reference_c: f64,
     warming: &'a Warming,
+    detrended: Option<&'a Detrended>,
     realizations: Realizations,
     report_units: UnitSystem,
 }
@@ -192,6 +201,7 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
             levels_c: &findings.levels_c,
             reference_c: findings.levels_c[findings.reference],
             warming: study.warming,
+            detrended: study.record.detrended,
             realizations: Realizations {
                 generator: "year-blocks",
                 count: findings.realizations,

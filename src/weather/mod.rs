@@ -22,4 +22,4 @@ pub use plausible::Means;
 pub use record::{Counts, Record, read};
 pub use series::{Series, YearSpan, YearView};
 pub use suspicious::{FirstPlace, Suspicion};
-pub use years::{Limits, SkippedYear, Why};
+pub use years::{Limits, SkippedYear, Why, in_groups};

@@ -6,6 +6,9 @@ use crate::units::UnitSystem;
 use chrono::NaiveDate;
 use serde::Serialize;
 
+/// Days of a leap year.
+const LONGEST_YEAR_DAYS: usize = 366;
+
 /// Limits of the screening; all of them are settings.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct Limits {
@@ -96,6 +99,29 @@ pub struct SkippedYear {
     pub water_year: i32,
     /// All that speaks against it.
     pub why: Vec<Why>,
+}
+
+/// Water years on end that are left out, with their reasons; years that one gap of more than a year takes out stand
+/// together.
+pub fn in_groups(skipped: &[SkippedYear]) -> Vec<(std::ops::RangeInclusive<i32>, Vec<&Why>)> {
+    let long_gap = |year: &SkippedYear| -> Option<NaiveDate> {
+        year.why.iter().find_map(|why| match why {
+            Why::TemperatureGap { from, days } if *days > LONGEST_YEAR_DAYS => Some(*from),
+            _ => None,
+        })
+    };
+    let belong = |a: &SkippedYear, b: &SkippedYear| {
+        a.water_year + 1 == b.water_year && long_gap(a).is_some() && long_gap(a) == long_gap(b)
+    };
+    let groups = skipped.chunk_by(belong).map(|group| {
+        let (first, last) = (&group[0], &group[group.len() - 1]);
+        let why: Vec<&Why> = match group {
+            [one] => one.why.iter().collect(),
+            _ => first.why.iter().filter(|why| matches!(why, Why::TemperatureGap { .. })).collect(),
+        };
+        (first.water_year..=last.water_year, why)
+    });
+    groups.collect()
 }
 
 /// Days `first_index..first_index + days` of the record that make up a water year.

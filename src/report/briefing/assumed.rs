@@ -29,7 +29,9 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
                 " for rain, once, at the observed temperature" }
             dt { "Elevation" } dd { "station at " (reader.elevation(study.station_elevation_m)) "; basin-mean precipitation is "
                 (fixed(study.basin.precipitation_ratio(study.station_elevation_m), 2)) " times the station's, so "
-                (reader.amount(study.basin.precipitation_ratio(study.station_elevation_m) * study.record.mean_precipitation_mm)) " a year" }
+                (reader.amount(study.basin.precipitation_ratio(study.station_elevation_m) * study.record.mean_precipitation_mm)) " a year"
+                @if let Some(beyond) = study.beyond_stations { "; " (fixed(100.0 * beyond.share_above, 0)) " % of the area lies above the highest station and "
+                    (fixed(100.0 * beyond.share_below, 0)) " % below the lowest, where results hang on the gradients alone" } }
             dt { "Warming" } dd { "added to every day's temperatures; storms, wet days and their order stay; precipitation changes "
                 (precipitation_in_words(reader, &study.warming.precipitation))
                 @if let Some(global) = study.warming.global { "; levels of global warming stand as "

@@ -2,6 +2,8 @@
 
 use super::super::numbers::fixed;
 use super::super::study::Study;
+use super::super::trends::{detrended_in_words, trends_in_words, years_stand_for};
+use crate::weather::in_groups;
 use maud::{Markup, html};
 
 /// The section.
@@ -25,13 +27,22 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
                 " times (" (reader.amount(gauge.small_falls_mm)) " in all, taken for noise)."
             }
         }
+        @if let Some(baseline) = record.baseline {
+            p { "Its years stand for " (years_stand_for(baseline)) ". "
+                @match record.detrended {
+                    Some(detrended) => { "Detrended: " (detrended_in_words(reader, detrended)) "." }
+                    None => { "Trends and steps of its seasons are left in:" }
+                }
+            }
+            dl { @for trend in trends_in_words(reader, baseline) { dt { (trend.name) } dd { (trend.sentences.join("; ")) "." } } }
+        }
         @if !record.skipped.is_empty() {
             div.scroll { table {
                 caption { "Water years left out; the year after each starts bare." }
                 thead { tr { th scope="col" { "Water year" } th.text scope="col" { "Why" } } }
-                tbody { @for year in record.skipped { tr {
-                    th scope="row" { (year.water_year) }
-                    td.text { @for (at, why) in year.why.iter().enumerate() { @if at > 0 { "; " } (why.words(reader.units)) } }
+                tbody { @for (years, why) in in_groups(record.skipped) { tr {
+                    th scope="row" { (years.start()) @if years.end() > years.start() { " to " (years.end()) } }
+                    td.text { @for (at, why) in why.into_iter().enumerate() { @if at > 0 { "; " } (why.words(reader.units)) } }
                 } } }
             } }
         }

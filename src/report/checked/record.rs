@@ -1,8 +1,9 @@
 //! The record: what there is, what is left out, what it measured.
 
-use super::super::numbers::{counted, fixed, signed};
+use super::super::numbers::{counted, fixed};
 use super::{Checked, Page};
 use crate::baseline::SeasonYears;
+use crate::weather::in_groups;
 
 impl Checked<'_> {
     pub(super) fn write_record(&self, page: &mut Page) {
@@ -18,9 +19,11 @@ impl Checked<'_> {
             "water years in use",
             format!("{} of {}{span}", years.len(), years.len() + self.record.skipped.len()),
         );
-        for year in &self.record.skipped {
-            let why: Vec<String> = year.why.iter().map(|why| why.words(self.reader.units)).collect();
-            page.line("  left out", format!("{}: {}", year.water_year, why.join("; ")));
+        for (years, why) in in_groups(&self.record.skipped) {
+            let why: Vec<String> = why.into_iter().map(|why| why.words(self.reader.units)).collect();
+            let (first, last) = (years.start(), years.end());
+            let years = if first == last { first.to_string() } else { format!("{first} to {last}") };
+            page.line("  left out", format!("{years}: {}", why.join("; ")));
         }
         page.line("dates without a line", fixed(counts.absent_days as f64, 0));
         page.line(
@@ -146,9 +149,4 @@ fn times(count: usize) -> String {
         1 => "once".to_owned(),
         count => format!("{} times", fixed(count as f64, 0)),
     }
-}
-
-/// `+0.12 °C`: a difference with its unit, where `signed` says which way.
-pub(super) fn difference(value: f64, decimals: usize, word: &str) -> String {
-    format!("{} {word}", signed(value, decimals))
 }
