@@ -3,6 +3,7 @@
 pub mod basin;
 mod data_faults;
 mod interrupt;
+mod keys;
 mod results;
 mod scenario_faults;
 mod streams;
