@@ -16,6 +16,8 @@ pub mod ensemble;
 pub mod fault;
 pub mod figures;
 pub mod findings;
+pub mod fit;
+pub mod observed;
 pub mod perturb;
 pub mod report;
 pub mod scenario;

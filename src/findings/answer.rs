@@ -10,6 +10,7 @@ use super::spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
 use super::variance::{TwoWay, VarianceShares};
 use crate::basin::Band;
 use crate::ensemble::{Halt, Seasons, Watch};
+use crate::fit::Comparison;
 use crate::season::{Kind, Measure, Place};
 use ndarray::{ArrayView2, Axis};
 use rayon::prelude::*;
@@ -43,6 +44,9 @@ pub struct Findings {
     pub basin: Vec<MeasureFindings>,
     /// Of each band, from the lowest.
     pub bands: Vec<BandFindings>,
+    /// The model against observed snow, one entry a site. No ensemble is asked for it: whoever has it adds it.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub comparisons: Vec<Comparison>,
 }
 
 /// Findings of one band.
@@ -149,6 +153,7 @@ pub fn answer(seasons: &Seasons, questions: &Questions<'_>, watch: &dyn Watch) -
                 measures: of_bands.by_ref().take(measures_of_a_band).collect(),
             })
             .collect(),
+        comparisons: Vec::new(),
     })
 }
 

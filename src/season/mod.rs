@@ -33,7 +33,7 @@ pub const BARE_MM: f64 = 1.0;
 const BASIN_MELT_OUT_SHARE: f64 = 0.05;
 
 /// SWE that differs by less is the same but for rounding, mm.
-const SAME_SWE_MM: f64 = 1e-9;
+pub const SAME_SWE_MM: f64 = 1e-9;
 
 /// Dates and windows of a season.
 #[derive(Debug, Clone, PartialEq, Serialize)]

@@ -8,6 +8,7 @@ mod calendar;
 mod case;
 mod closed_season;
 mod days;
+mod scores;
 mod statistics;
 mod trends;
 mod units;
@@ -17,7 +18,7 @@ use case::Case;
 /// What a case is run through.
 type Runner = fn(&Case);
 
-const RUNNERS: [(&str, Runner); 21] = [
+const RUNNERS: [(&str, Runner); 22] = [
     ("days", days::days),
     ("precipitation factor", days::precipitation_factor),
     ("temperature shift", days::temperature_shift),
@@ -39,6 +40,7 @@ const RUNNERS: [(&str, Runner); 21] = [
     ("areas", units::areas),
     ("volumes", units::volumes),
     ("water over an area", units::water_over_an_area),
+    ("scores", scores::scores),
 ];
 
 fn run(text: &str) {
@@ -74,6 +76,12 @@ fn changes() {
 #[test]
 fn water_year() {
     run(include_str!("calendar.toml"));
+}
+
+/// Efficiencies of modelled against observed values.
+#[test]
+fn scores_of_small_series() {
+    run(include_str!("scores.toml"));
 }
 
 /// Quantiles, partition of variance, signal to noise.

@@ -1,0 +1,103 @@
+//! The model where snow was measured: one lane a site, on the record as observed.
+
+use super::comparison::{About, Comparison};
+use super::year::{ComparedYear, DayPair};
+use crate::basin::Basin;
+use crate::calendar::days_between;
+use crate::observed::Observations;
+use crate::perturb::MonthlyChange;
+use crate::season::SeasonSettings;
+use crate::snow::{Engine, LaneSpec, Lanes, OpenLedger, SnowParams, YearBlock};
+use crate::weather::{Series, YearSpan};
+
+/// A site with observed snow.
+#[derive(Debug, Clone, Copy)]
+pub struct Site<'a> {
+    /// Its name.
+    pub name: &'a str,
+    /// Its elevation, m.
+    pub elevation_m: f64,
+    /// What was observed.
+    pub observations: &'a Observations,
+}
+
+/// The model that is compared.
+#[derive(Debug, Clone, Copy)]
+pub struct Model<'a> {
+    /// The basin, for its gradients.
+    pub basin: &'a Basin,
+    /// Elevation of the weather station, m.
+    pub station_m: f64,
+    /// Parameters.
+    pub snow: &'a SnowParams,
+    /// The years in use, precipitation corrected for catch.
+    pub weather: &'a Series,
+    /// Dates.
+    pub season: &'a SeasonSettings,
+}
+
+/// Runs the model without any warming at the elevation of every site, by the basin's gradients, and compares S(d) with
+/// what was observed on every day with a reading of the years in use. Years after a gap start bare.
+///
+/// # Errors
+/// A ledger that does not close.
+pub fn compare(sites: &[Site<'_>], model: &Model<'_>) -> Result<Vec<Comparison>, OpenLedger> {
+    if sites.is_empty() {
+        return Ok(Vec::new());
+    }
+    let specs = sites.iter().map(|site| LaneSpec {
+        basin: model.basin,
+        station_m: model.station_m,
+        elevation_m: site.elevation_m,
+        change: &MonthlyChange::NONE,
+        snow: model.snow,
+        share: 1.0 / sites.len() as f64,
+    });
+    let lanes = Lanes::new(&[specs.collect()]);
+    let mut engine = Engine::new(&lanes, false);
+    let mut years: Vec<Vec<ComparedYear>> = vec![Vec::new(); sites.len()];
+    for span in &model.weather.years {
+        if !span.follows {
+            engine.restart();
+        }
+        let block = engine.year(model.weather.view(span))?;
+        for (place, (site, years)) in sites.iter().zip(&mut years).enumerate() {
+            years.extend(compare_year(site, span, block, lanes.column(0, place), model.season));
+        }
+    }
+    let surveys = &model.season.survey_dates;
+    let put_together = |(site, years): (&Site<'_>, Vec<ComparedYear>)| {
+        let about = About {
+            site: site.name.to_owned(),
+            elevation_m: site.elevation_m,
+            kind: site.observations.kind,
+            file: site.observations.counts,
+        };
+        Comparison::of(about, years, surveys)
+    };
+    Ok(sites.iter().zip(years).map(put_together).collect())
+}
+
+/// A year of a site; none without a reading.
+fn compare_year(
+    site: &Site<'_>,
+    span: &YearSpan,
+    block: &YearBlock,
+    column: usize,
+    season: &SeasonSettings,
+) -> Option<ComparedYear> {
+    let states = &site.observations.states;
+    let from = states.partition_point(|state| state.date < span.first);
+    let mut days: Vec<DayPair> = (0..block.days)
+        .map(|day| DayPair { observed_mm: None, modelled_mm: block.row(&block.swe_mm, day)[column] })
+        .collect();
+    for state in &states[from..] {
+        match days.get_mut(days_between(span.first, state.date)) {
+            Some(day) => day.observed_mm = Some(state.swe_mm),
+            None => break,
+        }
+    }
+    let has_any = days.iter().any(|day| day.observed_mm.is_some());
+    let kind = site.observations.kind;
+    has_any.then(|| ComparedYear::of(span.water_year, span.first, days, kind, &season.survey_dates))
+}

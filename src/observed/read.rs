@@ -1,0 +1,170 @@
+//! Cells to states: a site's file in mm by date, and every cell that cannot be read.
+
+use super::columns::Columns;
+use super::observations::{Counts, Observations, State};
+use crate::fault::Fault;
+use crate::table::{DateReader, Row, Table, Tally};
+use crate::weather::{FirstPlace, Reading, Suspicion};
+use chrono::NaiveDate;
+use std::collections::BTreeMap;
+
+/// No snowpack at a station has held more: even the deepest on record, not quite 12 m of snow, would have to be water
+/// (record from memory), mm.
+const MOST_MM: f64 = 12_000.0;
+/// A file of more lines is one of something else.
+const MOST_LINES: usize = 400 * 366;
+
+/// A line of the file whose date reads.
+#[derive(Debug, Clone, Copy)]
+struct Line {
+    date: NaiveDate,
+    /// Its number in the file.
+    number: usize,
+    swe_mm: Option<f64>,
+}
+
+/// Reads a site's file. `file` names it in faults.
+///
+/// Lines may stand in any order. A start-of-day reading dated d is S(d), an end-of-day one S(d + 1). Readings beyond 12 000 mm
+/// are taken as missing, counted and said.
+///
+/// # Errors
+/// Every fault of the file: columns that are not there, cells that are neither number nor missing mark, negative SWE,
+/// dates that cannot be read or stand twice, a file without a reading.
+pub fn read(file: &str, text: &str, columns: &Columns) -> Result<Observations, Vec<Fault>> {
+    let table = Table::open(file, text, &columns.format).map_err(|fault| vec![fault])?;
+    let (mut dates, swe) = find(&table, columns)?;
+    let mut tally = Tally::default();
+    let mut lines: Vec<Line> = Vec::new();
+    for row in table.rows() {
+        let Some(row) = tally.keep(row) else { continue };
+        let date = dates.read(&table, &row, &mut tally);
+        let swe_mm = read_swe(&table, &row, columns, swe, &mut tally);
+        lines.extend(date.map(|date| Line { date, number: row.line, swe_mm }));
+        if lines.len() > MOST_LINES {
+            let found = "more lines than 400 years have days";
+            tally.push(table.file_fault(found, "at most one line a day", "check the file"));
+            break;
+        }
+    }
+    dates.finish(&table, &mut tally);
+    lines.sort_by_key(|line| line.date);
+    complain_of_repeats(&table, &dates, &lines, &mut tally);
+    if !tally.is_empty() {
+        return Err(tally.into_faults());
+    }
+    let observations = observations(&mut lines, columns.reading);
+    if observations.states.is_empty() {
+        let mend = "check that the column and its unit are the right ones, and what 'missing' says";
+        return Err(vec![table.file_fault("no reading", "at least one reading of SWE", mend)]);
+    }
+    Ok(observations)
+}
+
+fn find<'c>(table: &Table<'_>, columns: &'c Columns) -> Result<(DateReader<'c>, usize), Vec<Fault>> {
+    let (dates, swe) = (DateReader::new(table, &columns.date), table.column(&columns.swe.column));
+    match (dates, swe) {
+        (Ok(dates), Ok(swe)) if dates.columns().contains(&swe) => Err(vec![table.file_fault(
+            "one column named for both date and SWE",
+            "a column of its own for each",
+            "name the columns in [[observed_swe]]",
+        )]),
+        (Ok(dates), Ok(swe)) => Ok((dates, swe)),
+        (dates, swe) => Err(dates.err().into_iter().flatten().chain(swe.err()).collect()),
+    }
+}
+
+fn read_swe(
+    table: &Table<'_>,
+    row: &Row<'_>,
+    columns: &Columns,
+    column: usize,
+    tally: &mut Tally,
+) -> Option<f64> {
+    let number = tally.keep(table.number(row, column)).flatten()?;
+    if number < 0.0 {
+        tally.push(table.cell_fault(
+            row,
+            column,
+            "SWE of 0 or more",
+            "if it stands for 'not measured', add it to 'missing' where the scenario names the file; if a pillow drifts \
+             below 0 without snow, write 0",
+        ));
+        return None;
+    }
+    Some(columns.swe.unit.to_millimetres(number) + 0.0)
+}
+
+/// `lines` stand by date; of two with the same, the one lower in the file is at fault.
+fn complain_of_repeats(table: &Table<'_>, dates: &DateReader<'_>, lines: &[Line], tally: &mut Tally) {
+    let repeats = lines.windows(2).filter(|pair| pair[0].date == pair[1].date);
+    let first_by_line: BTreeMap<usize, usize> =
+        repeats.map(|pair| (pair[1].number, pair[0].number)).collect();
+    if first_by_line.is_empty() {
+        return;
+    }
+    for row in table.rows().filter_map(Result::ok) {
+        if let Some(first) = first_by_line.get(&row.line) {
+            let expected = format!("a date that line {first} does not have already");
+            tally.push(dates.fault(table, &row, &expected, "keep one reading a day"));
+        }
+    }
+}
+
+fn observations(lines: &mut [Line], reading: Reading) -> Observations {
+    let suspicions = sift(lines);
+    let impossible_readings =
+        suspicions.iter().map(|s| if s.is_taken_as_missing { s.count } else { 0 }).sum();
+    let read: Vec<(NaiveDate, f64)> =
+        lines.iter().filter_map(|line| line.swe_mm.map(|swe_mm| (line.date, swe_mm))).collect();
+    let states: Vec<State> = read
+        .iter()
+        .map(|(date, swe_mm)| {
+            let date = match reading {
+                Reading::StartOfDay => *date,
+                Reading::EndOfDay => date.succ_opt().unwrap_or(*date),
+            };
+            State { date, swe_mm: *swe_mm }
+        })
+        .collect();
+    let [first, last] = [read.first(), read.last()].map(|end| end.map_or(NaiveDate::MIN, |(date, _)| *date));
+    let counts = Counts {
+        readings: read.len(),
+        first,
+        last,
+        lines_without_reading: lines.len() - read.len(),
+        impossible_readings,
+    };
+    Observations { kind: Observations::kind_of(&states), states, counts, suspicions }
+}
+
+/// Takes out readings beyond any snowpack's, and says so; says where all readings are the same.
+fn sift(lines: &mut [Line]) -> Vec<Suspicion> {
+    let suspicion = |what: &str, mend: &str, is_taken_as_missing: bool, among: &[(Line, f64)]| {
+        among.first().map(|(first, swe_mm)| Suspicion {
+            about: "swe",
+            what: what.to_owned(),
+            count: among.len(),
+            is_taken_as_missing,
+            first: FirstPlace {
+                date: first.date,
+                line: Some(first.number),
+                value: format!("{swe_mm:.1} mm"),
+            },
+            mend: mend.to_owned(),
+        })
+    };
+    let read: Vec<(Line, f64)> =
+        lines.iter().filter_map(|line| line.swe_mm.map(|swe_mm| (*line, swe_mm))).collect();
+    let (impossible, possible): (Vec<_>, Vec<_>) =
+        read.into_iter().partition(|(_, swe_mm)| *swe_mm > MOST_MM);
+    for line in lines.iter_mut() {
+        line.swe_mm = line.swe_mm.filter(|swe_mm| *swe_mm <= MOST_MM);
+    }
+    let what = "readings above 12 000 mm, which no snowpack has held";
+    let beyond = suspicion(what, "Is the unit right?", true, &impossible);
+    let is_constant = possible.len() > 2 && possible.iter().all(|(_, swe_mm)| *swe_mm == possible[0].1);
+    let same = is_constant
+        .then(|| suspicion("readings, all of them the same", "Is it the right column?", false, &possible));
+    beyond.into_iter().chain(same.flatten()).collect()
+}
