@@ -1,5 +1,6 @@
 //! Tests of whole figures: text inside and apart, numbers that are numbers, titles that turn with the findings.
 
+mod comparisons;
 mod studies;
 
 use super::{FIGURES, Setting, text_width};
@@ -42,6 +43,20 @@ fn view_box(svg: &str) -> [f64; 2] {
     [width.parse().unwrap(), height.parse().unwrap()]
 }
 
+/// Every text lies inside the figure and on no other.
+fn assert_texts_apart(name: &str, svg: &str) {
+    let [width, height] = view_box(svg);
+    let texts = texts(svg);
+    for (at, ([left, top, right, bottom], words)) in texts.iter().enumerate() {
+        let inside = *left >= 0.0 && *top >= 0.0 && *right <= width && *bottom <= height;
+        assert!(inside, "{name}: {words:?} leaves the figure");
+        for ([l, t, r, b], other) in &texts[..at] {
+            let apart = right <= l || r <= left || bottom <= t || b <= top;
+            assert!(apart, "{name}: {words:?} on {other:?}");
+        }
+    }
+}
+
 #[test]
 fn text_lies_inside_and_apart_and_is_large_enough() {
     let long =
@@ -51,16 +66,7 @@ fn text_lies_inside_and_apart_and_is_large_enough() {
             .map(|units| ["Alder Fork", &long].map(|title| (units, title)));
         for (units, title) in both.into_iter().flatten() {
             for svg in study.draw_in(units, title, 10) {
-                let [width, height] = view_box(&svg.text);
-                let texts = texts(&svg.text);
-                for (at, ([left, top, right, bottom], words)) in texts.iter().enumerate() {
-                    let inside = *left >= 0.0 && *top >= 0.0 && *right <= width && *bottom <= height;
-                    assert!(inside, "{name}: {words:?} leaves the figure");
-                    for ([l, t, r, b], other) in &texts[..at] {
-                        let apart = right <= l || r <= left || bottom <= t || b <= top;
-                        assert!(apart, "{name}: {words:?} on {other:?}");
-                    }
-                }
+                assert_texts_apart(name, &svg.text);
             }
         }
     }

@@ -9,6 +9,7 @@ mod headline;
 mod labels;
 mod marks;
 mod melt_timing;
+mod observed_swe;
 mod page;
 mod reading;
 mod sheet;
@@ -25,6 +26,7 @@ pub use text_width::text_width;
 
 use crate::calendar::WaterYearStart;
 use crate::findings::Findings;
+use crate::fit::Comparison;
 use crate::units::UnitSystem;
 
 /// A figure.
@@ -40,6 +42,32 @@ pub struct Figure {
 
 /// Every figure, in the order in which a reader meets them.
 pub const FIGURES: [Figure; 2] = [swe_by_level::FIGURE, melt_timing::FIGURE];
+
+/// A figure of which there is one a site with observed snow.
+#[derive(Debug, Clone, Copy)]
+pub struct SiteFigure {
+    /// Its name in files and addresses; the site's number follows.
+    pub slug: &'static str,
+    /// The question that it answers.
+    pub question: &'static str,
+    /// Draws it under a name; nothing where the comparison has not what it shows.
+    pub draw: fn(&Comparison, &str, &Setting<'_>) -> Option<Svg>,
+}
+
+/// Every figure of a site.
+pub const SITE_FIGURES: [SiteFigure; 1] = [observed_swe::FIGURE];
+
+/// Draws every figure of every site, each with its name: `observed-swe-1` is the first site's.
+pub fn of_sites(comparisons: &[Comparison], setting: &Setting<'_>) -> Vec<(String, Svg)> {
+    let mut drawn = Vec::new();
+    for (site, comparison) in (1..).zip(comparisons) {
+        for figure in &SITE_FIGURES {
+            let slug = format!("{}-{site}", figure.slug);
+            drawn.extend((figure.draw)(comparison, &slug, setting).map(|svg| (slug, svg)));
+        }
+    }
+    drawn
+}
 
 /// What a figure needs to know beside the findings.
 #[derive(Debug, Clone, Copy)]

@@ -22,6 +22,9 @@ pub const EDGE: RGBColor = RGBColor(0x6f, 0x82, 0x8c);
 /// The band of the reference's spread; its edges carry the contrast.
 pub const BAND: RGBColor = RGBColor(0xe9, 0xef, 0xf2);
 
+/// What the model makes of the record, beside what was observed in ink.
+pub const MODELLED: RGBColor = WARMER[0];
+
 /// Warmer levels, from the least warm: lightness falls all the way, so that the order stands in grey.
 const WARMER: [RGBColor; 4] = [
     RGBColor(0x42, 0x89, 0xaf),
