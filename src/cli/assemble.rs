@@ -6,10 +6,12 @@ use super::input::{InputFile, ScenarioFile, missing_file, read_data, read_scenar
 use crate::baseline::{Baseline, Detrended, LEAST_YEARS, detrend};
 use crate::basin::Basin;
 use crate::fault::{Fault, Unlikely};
+use crate::fit::{Comparison, Model, Site, compare};
+use crate::observed::Observations;
 use crate::perturb::MonthlyChange;
 use crate::report::{Input, Origin, Reader};
-use crate::scenario::{DefaultInForce, Document, Draft, Scenario};
-use crate::snow::{LaneSpec, Lanes, correct_catch};
+use crate::scenario::{DefaultInForce, Document, Draft, ObservedTyped, Scenario};
+use crate::snow::{LaneSpec, Lanes, OpenLedger, correct_catch};
 use crate::weather::{Record, Series};
 use std::path::Path;
 
@@ -29,7 +31,9 @@ pub(super) struct Ready {
     pub baseline: Option<Baseline>,
     pub unlikely: Vec<Unlikely>,
     pub defaults: Vec<DefaultInForce>,
-    /// The scenario, the bands, the weather, as read.
+    /// What was observed at each site of the scenario.
+    pub observed: Vec<Observations>,
+    /// The scenario, the bands, the weather, the sites, as read.
     pub files: Vec<InputFile>,
     /// The last part of the scenario's name without the ending.
     pub stem: Option<String>,
@@ -46,10 +50,12 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
     let mut faults = std::mem::take(&mut draft.faults);
     let bands = take(read_bands_of(&draft, &folder), &mut faults).flatten();
     let record = take(read_record_of(&draft, &folder), &mut faults).flatten();
+    let observed = read_observed_of(&draft, &folder, &mut faults);
     for (key, name) in &draft.named_files {
-        let is_read = match *key {
+        let is_read = match key.as_str() {
             key if key.starts_with("basin.") => draft.basin.is_some(),
-            _ => draft.weather.is_some() && draft.season.is_some(),
+            "weather.file" => draft.weather.is_some() && draft.season.is_some(),
+            of_site => draft.observed.iter().flatten().any(|site| of_site == file_key(site)),
         };
         if !is_read {
             faults.extend(missing_file(&folder, name, key));
@@ -75,12 +81,20 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 None => None,
             };
             let baseline = Baseline::of(&weather, survey);
-            let files = vec![file.clone(), bands_file, weather_file];
+            let mut files = vec![file.clone(), bands_file, weather_file];
             let mut unlikely = draft.unlikely;
             unlikely.extend(record.unlikely(basin.is_southern()));
-            unlikely.extend(basin.unlikely(scenario.weather.station_elevation_m));
+            let station_m = scenario.weather.station_elevation_m;
+            unlikely.extend(basin.unlikely(station_m));
             unlikely
                 .extend(baseline.iter().flat_map(|baseline| baseline.unlikely(scenario.weather.detrend_to)));
+            let mut observations = Vec::with_capacity(observed.len());
+            for (site, (observed, file)) in scenario.observed.iter().zip(observed) {
+                unlikely.extend(observed.unlikely(&site.key, site.elevation_m, &basin, station_m));
+                unlikely.extend(observed.unused(&site.key, &weather));
+                observations.push(observed);
+                files.push(file);
+            }
             let defaults = draft.defaults;
             let ready = Ready {
                 scenario,
@@ -92,6 +106,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 baseline,
                 unlikely,
                 defaults,
+                observed: observations,
                 files,
                 stem,
             };
@@ -142,6 +157,24 @@ fn too_short_to_detrend(weather: &Series, file: &InputFile, shared: &Shared) -> 
     Failure::input(&[fault], &file.name, &file.text, shared.is_coloured())
 }
 
+/// Reads the file of every site whose table has no fault.
+fn read_observed_of(draft: &Draft, folder: &Path, faults: &mut Vec<Fault>) -> Vec<(Observations, InputFile)> {
+    let mut read = Vec::with_capacity(draft.observed.len());
+    for site in draft.observed.iter().flatten() {
+        let file = read_data(folder, &site.file, &file_key(site), site.columns.format.encoding);
+        let observations = file.map_err(|fault| vec![fault]).and_then(|file| {
+            let observations = crate::observed::read(&file.name, &file.text, &site.columns)?;
+            Ok((observations, file))
+        });
+        read.extend(take(observations, faults));
+    }
+    read
+}
+
+fn file_key(site: &ObservedTyped) -> String {
+    format!("{}.file", site.key)
+}
+
 fn take<T>(result: Result<T, Vec<Fault>>, faults: &mut Vec<Fault>) -> Option<T> {
     result.map_err(|more| faults.extend(more)).ok()
 }
@@ -150,8 +183,8 @@ impl Ready {
     /// What was read and the command that repeats it, without the flags that change no result.
     pub fn origin(&self, command: &str, path: &Path, shared: &Shared) -> Origin {
         let seed = shared.seed.map_or(String::new(), |seed| format!(" --seed {seed}"));
-        let roles = ["scenario", "bands", "weather"];
-        let inputs = roles.into_iter().zip(&self.files).map(|(role, file)| Input {
+        let roles = ["scenario", "bands", "weather"].into_iter().chain(std::iter::repeat("observed_swe"));
+        let inputs = roles.zip(&self.files).map(|(role, file)| Input {
             role,
             path: file.name.clone(),
             sha256: file.sha256.clone(),
@@ -166,6 +199,29 @@ impl Ready {
     /// Who reads what the command says.
     pub fn reader(&self) -> Reader {
         Reader { units: self.scenario.report.units, starts: self.scenario.season.water_year_starts }
+    }
+
+    /// The sites with observed snow.
+    pub fn sites(&self) -> Vec<Site<'_>> {
+        let sites = self.scenario.observed.iter().zip(&self.observed).map(|(site, observations)| Site {
+            name: &site.name,
+            elevation_m: site.elevation_m,
+            observations,
+        });
+        sites.collect()
+    }
+
+    /// The model against observed snow, a site each.
+    pub fn comparisons(&self) -> Result<Vec<Comparison>, OpenLedger> {
+        let scenario = &self.scenario;
+        let model = Model {
+            basin: &self.basin,
+            station_m: scenario.weather.station_elevation_m,
+            snow: &scenario.snow,
+            weather: &self.weather,
+            season: &scenario.season,
+        };
+        compare(&self.sites(), &model)
     }
 
     /// Mean yearly precipitation at the station, corrected for catch, mm.

@@ -44,6 +44,7 @@ fn describe<'a>(ready: &'a Ready, seasons: &'a Seasons, climates: &'a [BandClima
         climates,
         baseline: ready.baseline.as_ref(),
         detrended: ready.detrended.as_ref(),
+        sites: ready.sites(),
         season: &scenario.season,
         snow: &scenario.snow,
         levels_c: &scenario.warming.levels_c,

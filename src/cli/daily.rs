@@ -1,12 +1,17 @@
-//! `thawline daily`: the record as observed, day by day.
+//! `thawline daily`: the record as observed, day by day, and how near the model comes to observed snow.
 
 use super::arguments::Shared;
-use super::assemble::assemble;
+use super::assemble::{Ready, assemble};
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::progress::{is_interrupted, mind_interrupts};
+use crate::figures::{Setting, of_sites};
+use crate::fit::Comparison;
 use crate::perturb::MonthlyChange;
-use crate::report::{DailyError, daily_csv, daily_manifest_json, publish};
+use crate::report::{
+    DailyError, Reader, ReportFile, comparison_json, comparison_words, daily_csv, daily_manifest_json,
+    observed_tables, publish,
+};
 use std::io::{self, BufWriter, Write};
 use std::path::Path;
 
@@ -17,6 +22,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     }
     let ready = assemble(path, shared)?;
     let lanes = ready.lanes(&[MonthlyChange::NONE]);
+    let comparisons = ready.comparisons().map_err(|open| Failure::Ours(open.to_string()))?;
     if !shared.quiet {
         output::complain(&crate::scenario::unlikely_lines(&ready.unlikely));
         let left_out: Vec<String> =
@@ -28,10 +34,12 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     if let Some(into) = &shared.into {
         let mut table = Vec::new();
         daily_csv(&lanes, &ready.weather, &mut table).map_err(failure)?;
-        let names = ["daily.csv", "run.json"];
+        let mut files = vec![("daily.csv".to_owned(), table)];
+        files.extend(of_observed_snow(&ready, &comparisons)?);
+        let names: Vec<&str> = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
         let manifest = daily_manifest_json(&ready.origin("daily", path, shared), &names);
         let manifest = manifest.map_err(|error| Failure::Ours(error.to_string()))?;
-        let files = [(names[0].to_owned(), table), (names[1].to_owned(), manifest)];
+        files.push(("run.json".to_owned(), manifest));
         mind_interrupts();
         may_be_replaced(into, "daily", shared)?;
         if is_interrupted() {
@@ -39,13 +47,41 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         }
         publish(&files, into).map_err(|error| unpublished(&error))?;
         if !shared.quiet {
+            say(&comparisons, ready.reader());
             output::complain(&format!("daily table: {}\n", into.join("daily.csv").display()));
         }
         return Ok(());
     }
     let mut out = BufWriter::with_capacity(1 << 16, io::stdout().lock());
     daily_csv(&lanes, &ready.weather, &mut out).map_err(failure)?;
-    out.flush().map_err(|error| output::written(&error))
+    out.flush().map_err(|error| output::written(&error))?;
+    if !shared.quiet {
+        say(&comparisons, ready.reader());
+    }
+    Ok(())
+}
+
+/// Says how near the model comes to observed snow.
+fn say(comparisons: &[Comparison], reader: Reader) {
+    for comparison in comparisons {
+        output::complain(&comparison_words(comparison, reader));
+    }
+}
+
+/// Tables, figures and the document of the sites with observed snow; nothing without one.
+fn of_observed_snow(ready: &Ready, comparisons: &[Comparison]) -> Result<Vec<ReportFile>, Failure> {
+    if comparisons.is_empty() {
+        return Ok(Vec::new());
+    }
+    let title = &ready.scenario.title;
+    let Reader { units, starts: water_year_starts } = ready.reader();
+    let setting = Setting { study_title: title, units, water_year_starts };
+    let mut files = observed_tables(comparisons, units);
+    let document = comparison_json(title, comparisons).map_err(|error| Failure::Ours(error.to_string()))?;
+    files.push(("comparison.json".to_owned(), document));
+    let figures = of_sites(comparisons, &setting).into_iter();
+    files.extend(figures.map(|(slug, svg)| (format!("figures/{slug}.svg"), svg.text.into_bytes())));
+    Ok(files)
 }
 
 fn failure(error: DailyError) -> Failure {

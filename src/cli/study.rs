@@ -7,7 +7,7 @@ use super::output;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
 use crate::ensemble::{Halt, Plan, record_years, run as run_ensemble};
 use crate::fault::Fault;
-use crate::figures::{FIGURES, Setting};
+use crate::figures::{FIGURES, Setting, of_sites};
 use crate::findings::{Findings, Questions, answer};
 use crate::perturb::YearBlocks;
 use crate::report::numbers::counted;
@@ -127,7 +127,9 @@ fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findi
         bands: &ready.basin.bands,
         seed: scenario.seed,
     };
-    answer(&seasons, &questions, progress).map_err(halted)
+    let findings = answer(&seasons, &questions, progress).map_err(halted)?;
+    let comparisons = ready.comparisons().map_err(|open| Failure::Ours(open.to_string()))?;
+    Ok(Findings { comparisons, ..findings })
 }
 
 fn halted(halt: Halt) -> Failure {
@@ -189,8 +191,13 @@ fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Fa
             drawn.push(svg);
         }
     }
+    let (slugs, drawn_of_sites): (Vec<_>, Vec<_>) =
+        of_sites(&study.findings.comparisons, &setting).into_iter().unzip();
+    for (slug, svg) in slugs.iter().zip(&drawn_of_sites) {
+        files.push((format!("figures/{slug}.svg"), svg.text.clone().into_bytes()));
+    }
     files.extend(tables(study));
-    files.push(("briefing.html".to_owned(), briefing_html(study, answer, &drawn)));
+    files.push(("briefing.html".to_owned(), briefing_html(study, answer, &drawn, &drawn_of_sites)));
     files.push(("summary.json".to_owned(), summary_json(study, answer).map_err(ours)?));
     let names: Vec<&str> = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
     let manifest = manifest_json(study, &names).map_err(ours)?;

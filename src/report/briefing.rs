@@ -3,6 +3,7 @@
 mod answer;
 mod assumed;
 mod levels;
+mod observed;
 mod record;
 
 use super::numbers::counted;
@@ -15,8 +16,9 @@ use sha2::{Digest, Sha256};
 
 const STYLE: &str = include_str!("briefing/style.css");
 
-/// The page. Nothing is fetched and no script runs: its own policy forbids both.
-pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg]) -> Vec<u8> {
+/// The page; `of_sites` are the figures of observed snow. Nothing is fetched and no script runs: its own policy forbids
+/// both.
+pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg], of_sites: &[Svg]) -> Vec<u8> {
     let findings = study.findings;
     let policy =
         format!("default-src 'none'; style-src 'sha256-{}'", base64(&Sha256::digest(STYLE.as_bytes())));
@@ -40,14 +42,18 @@ pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg]) -> Vec
                     p.notice {
                         "This model is not fitted to observed snow. Its parameters are "
                         @if study.defaults.iter().any(|(key, _)| key.starts_with("snow.")) { "at least in part the defaults" } @else { "those stated in the scenario" }
-                        ", and they decide headlines: hold the record's own years below against snow you know before you rely on any number here."
+                        ", and they decide headlines: "
+                        @if findings.comparisons.is_empty() { "hold the record's own years below against snow you know before you rely on any number here." } @else {
+                            "read how far it is from " a href=(format!("#{}", observed::ADDRESS)) { "what was observed" } " before you rely on any number here."
+                        }
                     }
                     (answer::section(study, answer))
                     @for figure in figures {
-                        figure { div.scroll { (PreEscaped(&figure.text)) } details { summary { "How to read this figure" } p { (figure.caption) } } }
+                        (self::figure(figure))
                     }
                     (levels::section(study))
                     (record::section(study))
+                    (observed::section(study, of_sites))
                     (assumed::section(study))
                     (list_section("Cautions", &cautions::cautions(study.reader)))
                     h2 { "Terms" }
@@ -58,6 +64,11 @@ pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg]) -> Vec
         }
     };
     page.into_string().into_bytes()
+}
+
+/// A figure, and how to read it.
+fn figure(figure: &Svg) -> Markup {
+    html! { figure { div.scroll { (PreEscaped(&figure.text)) } details { summary { "How to read this figure" } p { (figure.caption) } } } }
 }
 
 fn list_section(title: &str, sentences: &[String]) -> Markup {

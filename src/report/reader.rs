@@ -17,8 +17,12 @@ pub struct Reader {
 impl Reader {
     /// `412 mm`, `16.2 in`: a depth of water.
     pub fn amount(self, value_mm: f64) -> String {
-        let depth = self.units.depth();
-        format!("{} {}", fixed(depth.of(value_mm), self.amount_decimals(value_mm)), depth.word)
+        format!("{} {}", self.amount_bare(value_mm), self.units.depth().word)
+    }
+
+    /// The same without its unit.
+    pub fn amount_bare(self, value_mm: f64) -> String {
+        fixed(self.units.depth().of(value_mm), self.amount_decimals(value_mm))
     }
 
     /// `−112 mm`, `+0.43 in`: a change of a depth of water.

@@ -243,7 +243,8 @@ pub fn daily_manifest_json(origin: &Origin, files: &[&str]) -> serde_json::Resul
     })
 }
 
-fn lines(document: &impl Serialize) -> serde_json::Result<Vec<u8>> {
+/// A document as it is written: indented, with a line end.
+pub(super) fn lines(document: &impl Serialize) -> serde_json::Result<Vec<u8>> {
     let mut text = serde_json::to_vec_pretty(document)?;
     text.push(b'\n');
     Ok(text)

@@ -1,5 +1,6 @@
 //! Tables as CSV: units in the header, uncertainty beside every estimate, empty where there is no number.
 
+use super::observed::observed_tables;
 use super::study::Study;
 use crate::findings::{Chance, Distribution, Estimate, LevelFindings, MeasureFindings};
 use crate::season::{Kind, Measure, Outcome};
@@ -18,7 +19,7 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
         numbered
             .flat_map(|(number, band)| band.measures.iter().map(move |m| (Some((number + 1, &band.band)), m)))
     };
-    vec![
+    let mut tables = vec![
         ("tables/basin-amounts.csv".to_owned(), table(basin().collect(), study.reader.units, Kind::AmountMm)),
         (
             "tables/basin-dates.csv".to_owned(),
@@ -30,7 +31,9 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
             table(bands().collect(), study.reader.units, Kind::DayOfWaterYear),
         ),
         ("tables/record-years.csv".to_owned(), record_years(study)),
-    ]
+    ];
+    tables.extend(observed_tables(&findings.comparisons, study.reader.units));
+    tables
 }
 
 type Place<'a> = Option<(usize, &'a crate::basin::Band)>;
@@ -205,7 +208,7 @@ impl Told {
     }
 }
 
-fn optional(value: Option<f64>) -> String {
+pub(super) fn optional(value: Option<f64>) -> String {
     value.map_or(String::new(), |value| value.to_string())
 }
 
@@ -219,10 +222,10 @@ fn chance(chance: Option<Chance>) -> [String; 3] {
 }
 
 /// Writing to memory cannot fail.
-fn write(writer: &mut Writer<Vec<u8>>, row: &[String]) {
+pub(super) fn write(writer: &mut Writer<Vec<u8>>, row: &[String]) {
     let _ = writer.write_record(row);
 }
 
-fn finish(writer: Writer<Vec<u8>>) -> Vec<u8> {
+pub(super) fn finish(writer: Writer<Vec<u8>>) -> Vec<u8> {
     writer.into_inner().unwrap_or_default()
 }

@@ -13,6 +13,7 @@ mod hypsometry;
 mod levels;
 mod nearest;
 mod notes;
+mod observed;
 mod precipitation_change;
 mod realizations;
 mod report;
@@ -27,6 +28,7 @@ pub use document::Document;
 pub use draw::{Drawing, Located, draw, located, unlikely_lines};
 pub use hypsometry::HypsometryTyped;
 pub use notes::DefaultInForce;
+pub use observed::ObservedTyped;
 pub use realizations::RealizationsTyped;
 pub use report::ReportTyped;
 pub use warming::WarmingTyped;
@@ -62,6 +64,8 @@ pub struct Scenario {
     pub realizations: RealizationsTyped,
     /// How results are told.
     pub report: ReportTyped,
+    /// Sites with observed snow.
+    pub observed: Vec<ObservedTyped>,
 }
 
 /// What could be read of a scenario, part by part: a part with a fault is missing, the others can still be used to look
@@ -73,7 +77,7 @@ pub struct Draft {
     /// The seed.
     pub seed: u64,
     /// Data files that the scenario names, each with its key, also where the table around it has a fault.
-    pub named_files: Vec<(&'static str, String)>,
+    pub named_files: Vec<(String, String)>,
     /// `[basin]`.
     pub basin: Option<BasinTyped>,
     /// `[weather]`.
@@ -88,6 +92,8 @@ pub struct Draft {
     pub realizations: Option<RealizationsTyped>,
     /// `[report]`.
     pub report: Option<ReportTyped>,
+    /// `[[observed_swe]]`, a site each.
+    pub observed: Vec<Option<ObservedTyped>>,
     /// Every fault of the text.
     pub faults: Vec<Fault>,
     /// What is allowed but unlikely.
@@ -109,6 +115,7 @@ impl Draft {
             warming: self.warming.clone()?,
             realizations: self.realizations.clone()?,
             report: self.report?,
+            observed: self.observed.iter().cloned().collect::<Option<_>>()?,
         })
     }
 }
@@ -138,8 +145,9 @@ pub fn read(document: &Document<'_>) -> Draft {
     let warming = warming::read(top.section("warming"));
     let realizations = realizations::read(top.section("realizations"));
     let report = report::read(top.section("report"));
+    let observed = observed::read(top.sections("observed_swe"));
     top.finish();
-    let parts = (basin, weather, season, snow, warming, realizations, report);
+    let parts = (basin, weather, season, snow, warming, realizations, report, observed);
     let mut draft = notes.into_draft(title, seed, parts);
     document.keep_what_is_certain(&mut draft.faults);
     draft

@@ -1,6 +1,6 @@
 //! What is met while a scenario is read: faults, what is unlikely, defaults in force, files it names.
 
-use super::{BasinTyped, Draft, RealizationsTyped, ReportTyped, WarmingTyped, WeatherTyped};
+use super::{BasinTyped, Draft, ObservedTyped, RealizationsTyped, ReportTyped, WarmingTyped, WeatherTyped};
 use crate::fault::{Fault, Unlikely};
 use crate::season::SeasonSettings;
 use crate::snow::SnowParams;
@@ -22,7 +22,7 @@ pub(super) struct Notes {
     pub faults: RefCell<Vec<Fault>>,
     pub unlikely: RefCell<Vec<Unlikely>>,
     pub defaults: RefCell<Vec<DefaultInForce>>,
-    pub named_files: RefCell<Vec<(&'static str, String)>>,
+    pub named_files: RefCell<Vec<(String, String)>>,
 }
 
 type Parts = (
@@ -33,11 +33,12 @@ type Parts = (
     Option<WarmingTyped>,
     Option<RealizationsTyped>,
     Option<ReportTyped>,
+    Vec<Option<ObservedTyped>>,
 );
 
 impl Notes {
     pub fn into_draft(self, title: Option<String>, seed: u64, parts: Parts) -> Draft {
-        let (basin, weather, season, snow, warming, realizations, report) = parts;
+        let (basin, weather, season, snow, warming, realizations, report, observed) = parts;
         Draft {
             title,
             seed,
@@ -48,6 +49,7 @@ impl Notes {
             warming,
             realizations,
             report,
+            observed,
             faults: self.faults.into_inner(),
             unlikely: self.unlikely.into_inner(),
             defaults: self.defaults.into_inner(),

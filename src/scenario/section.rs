@@ -32,6 +32,11 @@ impl<'d> Section<'d> {
         Self { document, notes, path, table, known: Vec::new() }
     }
 
+    /// The dotted path of the table.
+    pub fn path(&self) -> &str {
+        &self.path
+    }
+
     /// The dotted path of one of the table's keys.
     pub fn path_of(&self, key: &str) -> String {
         if self.path.is_empty() { key.to_owned() } else { format!("{}.{key}", self.path) }
@@ -56,8 +61,9 @@ impl<'d> Section<'d> {
     }
 
     /// Notes that a key names a data file.
-    pub fn names_file(&self, key: &'static str, file: Option<&str>) {
-        self.notes.named_files.borrow_mut().extend(file.map(|file| (key, file.to_owned())));
+    pub fn names_file(&self, key: &str, file: Option<&str>) {
+        let named = file.map(|file| (key.to_owned(), file.to_owned()));
+        self.notes.named_files.borrow_mut().extend(named);
     }
 
     /// Whether the key was typed and holds a table.
@@ -115,15 +121,51 @@ impl<'d> Section<'d> {
         Self::new(self.document, self.notes, path, table)
     }
 
+    /// The tables of a list, each under its own `[[key]]`; none where there are none.
+    pub fn sections(&mut self, key: &'static str) -> Vec<Self> {
+        let (list, value) = (self.path_of(key), self.value(key));
+        let refuse = |path: String, found: &DeValue<'_>| {
+            self.fault(Fault::key(
+                path,
+                described(found),
+                format!("a list of tables '{key}'"),
+                format!("begin each with a line [[{list}]]"),
+            ));
+        };
+        let elements = match value {
+            None => return Vec::new(),
+            Some(DeValue::Array(array)) => array,
+            Some(other) => {
+                refuse(list.clone(), other);
+                return Vec::new();
+            }
+        };
+        let mut sections = Vec::with_capacity(elements.len());
+        for (at, element) in elements.iter().enumerate() {
+            let path = format!("{list}[{at}]");
+            match element.get_ref() {
+                DeValue::Table(table) => {
+                    sections.push(Self::new(self.document, self.notes, path, Some(table)));
+                }
+                other => refuse(path, other),
+            }
+        }
+        sections
+    }
+
     /// A table that must be there.
     pub fn required_section(&mut self, key: &'static str) -> Self {
         if self.table.is_some() && !self.has(key) {
             let (found, mend) = if self.path.is_empty() {
                 (format!("no [{key}]"), format!("add a line [{key}] and its keys below it"))
             } else {
+                let line = match self.path.split_once('[') {
+                    Some((list, _)) => format!("[[{list}]]"),
+                    None => format!("[{}]", self.path),
+                };
                 (
                     format!("no '{key}'"),
-                    format!("add {key} = {{ column = \"...\", unit = \"...\" }} in [{}]", self.path),
+                    format!("add {key} = {{ column = \"...\", unit = \"...\" }} in {line}"),
                 )
             };
             self.fault(Fault::key(self.path_of(key), found, format!("a table '{key}'"), mend));

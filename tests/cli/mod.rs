@@ -4,6 +4,7 @@ pub mod basin;
 mod data_faults;
 mod interrupt;
 mod keys;
+mod observed;
 mod results;
 mod scenario_faults;
 mod streams;

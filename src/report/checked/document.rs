@@ -2,6 +2,7 @@
 
 use super::super::SCHEMA_VERSION;
 use super::Checked;
+use super::observed::SiteDocument;
 use crate::baseline::{Baseline, Detrended, wilson};
 use crate::basin::{Band, BeyondStations};
 use crate::ensemble::BandClimate;
@@ -35,6 +36,7 @@ struct Document<'a> {
     bands: Vec<BandDocument<'a>>,
     baseline: Option<&'a Baseline>,
     detrended: Option<&'a Detrended>,
+    observed_swe: Vec<SiteDocument<'a>>,
     season: &'a SeasonSettings,
     snow: &'a SnowParams,
     is_fitted: bool,
@@ -112,6 +114,7 @@ impl Checked<'_> {
                 .collect(),
             baseline: self.baseline,
             detrended: self.detrended,
+            observed_swe: self.sites.iter().map(SiteDocument::of).collect(),
             season: self.season,
             snow: self.snow,
             is_fitted: false,

@@ -3,6 +3,7 @@
 mod baseline;
 mod document;
 mod elevation;
+mod observed;
 mod record;
 
 use super::numbers::{counted, fixed, signed};
@@ -11,6 +12,7 @@ use crate::baseline::{Baseline, Detrended, Seasons};
 use crate::basin::{Basin, BeyondStations};
 use crate::ensemble::BandClimate;
 use crate::fault::Unlikely;
+use crate::fit::Site;
 use crate::perturb::Warming;
 use crate::season::SeasonSettings;
 use crate::snow::{GaugeMultiplier, SnowParams};
@@ -47,6 +49,8 @@ pub struct Checked<'a> {
     pub baseline: Option<&'a Baseline>,
     /// The trend that was taken out for the realizations.
     pub detrended: Option<&'a Detrended>,
+    /// Sites with observed snow.
+    pub sites: Vec<Site<'a>>,
     /// Dates and windows.
     pub season: &'a SeasonSettings,
     /// Snow parameters.
@@ -123,6 +127,7 @@ impl Checked<'_> {
         self.write_precipitation(&mut page);
         self.write_elevation(&mut page);
         self.write_baseline(&mut page);
+        self.write_observed(&mut page);
         self.write_levels(&mut page);
         page.head("Snow model");
         page.line("fitted", "no: its parameters are not fitted to observed snow");
