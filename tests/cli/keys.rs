@@ -54,7 +54,7 @@ fn precipitation_stated_by_level_by_month_and_per_degree() {
     basin.exchange("levels_c = [0, 2]", "levels_c = [0, 2]\nprecipitation_change_pct_per_c = 5");
     let per_degree = medians(&basin);
     assert!(per_degree[0] == none[0] && per_degree[1] > none[1]);
-    let twelve = |pct: &str| format!("[{}]", vec![pct; 12].join(", "));
+    let twelve = |pct: &str| format!("[{}]", [pct; 12].join(", "));
     let mut typed = "precipitation_change_pct_per_c = 5".to_owned();
     let forms = [
         "precipitation_change_pct = 10.25".to_owned(),
