@@ -65,6 +65,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
             0.0..=100.0,
             "degC by which a season's mean may differ from the record's median; 6 is the default",
         ),
+        stuck_temperature_days: None,
         temperature_departure_c: section.number_in(
             "temperature_departure_c",
             5.0..=200.0,

@@ -29,6 +29,8 @@ pub struct Counts {
     pub impossible_cells: usize,
     /// Temperatures too far from the median of their time of year; taken as missing where that was asked for.
     pub far_temperature_cells: usize,
+    /// Temperatures that did not change for too long; taken as missing where that was asked for.
+    pub stuck_temperature_cells: usize,
     /// Days without a full pair of temperatures.
     pub temperature_missing_days: usize,
     /// Days on which the minimum stood above the maximum; both are taken as missing.
@@ -116,6 +118,7 @@ pub fn read(
         absent_days: days.line.iter().filter(|line| **line == 0).count(),
         impossible_cells: sifted.impossible_cells,
         far_temperature_cells: sifted.far_cells,
+        stuck_temperature_cells: sifted.stuck_cells,
         temperature_missing_days: no_temperature.iter().filter(|missing| **missing).count(),
         crossed_temperature_days: sifted.crossed_days,
         interpolated_days: 0,

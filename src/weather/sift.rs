@@ -34,6 +34,8 @@ pub(super) struct Sifted {
     pub crossed_days: usize,
     /// Cells farther from the median of their time of year than the limits allow.
     pub far_cells: usize,
+    /// Cells in runs of equal temperatures that the limits do not allow.
+    pub stuck_cells: usize,
     pub suspicions: Vec<Suspicion>,
 }
 
@@ -59,8 +61,9 @@ pub(super) fn sift(days: &mut RawDays, columns: &Columns, limits: &Limits) -> Si
     impossible_cells +=
         finder.drop("weather.precipitation", what, &mut days.gauge_mm, "mm", |_, value| value > most_mm);
     let crossed_days = if keys.len() == 2 { uncross(&mut finder, days) } else { 0 };
-    let mut far_cells = 0;
+    let (mut far_cells, mut stuck_cells) = (0, 0);
     for (key, column) in keys.iter().zip([&mut days.tmin_c, &mut days.tmax_c]) {
+        stuck_cells += stuck(&mut finder, key, column, limits.stuck_temperature_days);
         far_cells += far_from_median(&mut finder, key, column, limits.temperature_departure_c);
         unusual(&mut finder, key, column);
     }
@@ -73,7 +76,7 @@ pub(super) fn sift(days: &mut RawDays, columns: &Columns, limits: &Limits) -> Si
         days.tmax_c.clone_from(&days.tmin_c);
     }
     no_leap_days(&mut finder, days);
-    Sifted { impossible_cells, crossed_days, far_cells, suspicions: finder.found }
+    Sifted { impossible_cells, crossed_days, far_cells, stuck_cells, suspicions: finder.found }
 }
 
 /// Daily amounts that are hardly precipitation. `line` holds the line of each day, 0 where it has none.
@@ -144,32 +147,52 @@ fn far_from_median(
     0
 }
 
-/// Extremes, a column that never changes, and runs of equal values.
+/// Extremes.
 fn unusual(finder: &mut Finder, key: &'static str, column: &[Option<f64>]) {
     let (low, high) = (USUAL_C.start(), USUAL_C.end());
     finder.note(key, format!("values beyond {low} to {high} degC"), "", |day| {
         column[day].filter(|value| !USUAL_C.contains(value)).map(|value| said(value, "degC"))
     });
-    let mut measured = column.iter().flatten();
-    let first = measured.next();
-    if first.is_some() && column.len() > STUCK_DAYS && measured.all(|value| Some(value) == first) {
-        finder.note(key, "values, all of them the same", "Is it the right column?", |day| {
-            column[day].map(|value| said(value, "degC"))
-        });
-        return;
-    }
-    let stuck = in_long_runs(column);
-    let what = format!("values in runs of {STUCK_DAYS} or more days on which it did not change");
-    finder.note(key, what, "A stuck sensor?", |day| {
-        column[day].filter(|_| stuck[day]).map(|value| said(value, "degC"))
-    });
 }
 
-/// Whether each day lies in a run of equal values of [`STUCK_DAYS`] or more.
-fn in_long_runs(column: &[Option<f64>]) -> Vec<bool> {
+/// A column that never changes, or runs of equal temperatures: taken as missing from a stated length on, else said.
+fn stuck(
+    finder: &mut Finder,
+    key: &'static str,
+    column: &mut [Option<f64>],
+    limit_days: Option<usize>,
+) -> usize {
+    let what = |days: usize| format!("values in runs of {days} or more days on which it did not change");
+    if let Some(days) = limit_days {
+        let stuck = in_long_runs(column, days);
+        return finder.drop(key, what(days), column, "degC", |day, _| stuck[day]);
+    }
+    let mut measured = column.iter().flatten();
+    let first = measured.next();
+    let note = |finder: &mut Finder, what: String, mend: String, is: &dyn Fn(usize) -> bool| {
+        finder.note(key, what, mend, |day| column[day].filter(|_| is(day)).map(|value| said(value, "degC")));
+    };
+    if first.is_some() && column.len() > STUCK_DAYS && measured.all(|value| Some(value) == first) {
+        note(
+            finder,
+            "values, all of them the same".to_owned(),
+            "Is it the right column?".to_owned(),
+            &|_| true,
+        );
+        return 0;
+    }
+    let stuck = in_long_runs(column, STUCK_DAYS);
+    let mend =
+        format!("A stuck sensor? stuck_temperature_days = {STUCK_DAYS} in [weather] takes them as missing");
+    note(finder, what(STUCK_DAYS), mend, &|day| stuck[day]);
+    0
+}
+
+/// Whether each day lies in a run of so many equal values or more.
+fn in_long_runs(column: &[Option<f64>], days: usize) -> Vec<bool> {
     let mut stuck = Vec::with_capacity(column.len());
     for run in column.chunk_by(|a, b| a.is_some() && a == b) {
-        stuck.resize(stuck.len() + run.len(), run.len() >= STUCK_DAYS);
+        stuck.resize(stuck.len() + run.len(), run.len() >= days && run[0].is_some());
     }
     stuck
 }

@@ -20,6 +20,8 @@ pub struct Limits {
     pub season_mean_departure_c: f64,
     /// A temperature farther from the median of its time of year is taken as missing, degC; none keeps them all.
     pub temperature_departure_c: Option<f64>,
+    /// A temperature that stays the same for this many days or more is taken as missing there; none keeps them all.
+    pub stuck_temperature_days: Option<usize>,
 }
 
 impl Default for Limits {
@@ -29,6 +31,7 @@ impl Default for Limits {
             missing_days_allowed: 15,
             season_mean_departure_c: 6.0,
             temperature_departure_c: None,
+            stuck_temperature_days: None,
         }
     }
 }

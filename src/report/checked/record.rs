@@ -42,7 +42,7 @@ impl Checked<'_> {
                 fixed(counts.dry_for_want_of_data_days as f64, 0)
             ),
         );
-        let taken = counts.impossible_cells + counts.far_temperature_cells;
+        let taken = counts.impossible_cells + counts.far_temperature_cells + counts.stuck_temperature_cells;
         page.line(
             "taken as missing",
             format!(
