@@ -33,6 +33,15 @@ impl TemperatureUnit {
             Self::Kelvin => value - 273.15,
         }
     }
+
+    /// A temperature in degC, in this unit.
+    pub fn from_celsius(self, value_c: f64) -> f64 {
+        match self {
+            Self::Celsius => value_c,
+            Self::Fahrenheit => value_c * 1.8 + 32.0,
+            Self::Kelvin => value_c + 273.15,
+        }
+    }
 }
 
 /// Unit of a water-depth column.

@@ -2,7 +2,7 @@
 
 use super::columns::{Column, both};
 use crate::fault::Fault;
-use crate::table::{Format, Row, Table, Tally};
+use crate::table::{Format, Row, Table, Tally, joined};
 use crate::units::{AreaUnit, LengthUnit};
 use serde::Serialize;
 
@@ -70,14 +70,16 @@ pub fn read_bands(file: &str, text: &str, columns: &BandColumns) -> Result<Vec<B
     let ([lower, upper], area, mean) = match (edges, area, mean) {
         (Ok(edges), Ok(area), Ok(mean)) => (edges, area, mean),
         (edges, area, mean) => {
-            return Err([edges.err(), area.err(), mean.err()].into_iter().flatten().flatten().collect());
+            return Err(joined(
+                [edges.err(), area.err(), mean.err()].into_iter().flatten().flatten().collect(),
+            ));
         }
     };
 
     let mut tally = Tally::default();
     let mut bands: Vec<(Row<'_>, Band)> = Vec::new();
-    for row in table.rows() {
-        if bands.len() == MOST_BANDS {
+    for (number, row) in table.rows().enumerate() {
+        if number == MOST_BANDS {
             tally.push(table.file_fault(
                 format!("more than {MOST_BANDS} bands"),
                 "bands some 50 to 300 m high",
@@ -104,7 +106,7 @@ pub fn read_bands(file: &str, text: &str, columns: &BandColumns) -> Result<Vec<B
             complain(area.0, "an area above 0", "leave out bands without area");
         }
         if let Some((at, _)) = mean
-            && !(lower_m.min(band.elevation_m)..=upper_m.max(lower_m)).contains(&band.elevation_m)
+            && !(lower_m.min(upper_m)..=upper_m.max(lower_m)).contains(&band.elevation_m)
         {
             complain(at, "a mean within the band", "check it against the edges");
         }

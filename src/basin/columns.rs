@@ -41,11 +41,7 @@ impl<U: Copy> Column<U> {
                     }
                     several => {
                         let all: Vec<&str> = several.iter().map(|(name, _)| name.as_str()).collect();
-                        Err(table.file_fault(
-                            format!("the columns {} beside each other", all.join(" and ")),
-                            "each quantity in one unit",
-                            "take all but one of them out",
-                        ))
+                        Err(table.beside_each_other(&all))
                     }
                 }
             }

@@ -3,8 +3,11 @@
 use super::bands::{Band, MOST_BANDS};
 use super::columns::{Column, both};
 use crate::fault::Fault;
-use crate::table::{Format, Row, Table, Tally};
+use crate::table::{Format, Row, Table, Tally, joined};
 use crate::units::{AreaUnit, LengthUnit};
+
+/// A curve of more points is a table of something else.
+const MOST_POINTS: usize = 20_000;
 
 /// How a curve is to be read and cut.
 #[derive(Debug, Clone, PartialEq)]
@@ -39,11 +42,21 @@ pub fn read_curve(file: &str, text: &str, columns: &CurveColumns) -> Result<Vec<
     let area = columns.area_below.find(&table, &AreaUnit::NAMES);
     let (elevation, area) = match (elevation, area) {
         (Ok(elevation), Ok(area)) => (elevation, area),
-        (elevation, area) => return Err([elevation.err(), area.err()].into_iter().flatten().collect()),
+        (elevation, area) => {
+            return Err(joined([elevation.err(), area.err()].into_iter().flatten().collect()));
+        }
     };
     let mut tally = Tally::default();
     let mut points: Vec<(Row<'_>, Point)> = Vec::new();
-    for row in table.rows() {
+    for (number, row) in table.rows().enumerate() {
+        if number == MOST_POINTS {
+            tally.push(table.file_fault(
+                format!("more than {MOST_POINTS} points"),
+                "a curve of some 10 to 1000 points",
+                "leave points out: between them the curve is a straight line",
+            ));
+            break;
+        }
         let Some(row) = tally.keep(row) else { continue };
         let read = both(table.required_number(&row, elevation.0), table.required_number(&row, area.0));
         match read {
@@ -78,7 +91,7 @@ pub fn read_curve(file: &str, text: &str, columns: &CurveColumns) -> Result<Vec<
 fn check(table: &Table<'_>, points: &[(Row<'_>, Point)], [elevation, area]: [usize; 2], tally: &mut Tally) {
     if points.len() < 2 {
         tally.push(table.file_fault(
-            format!("{} points", points.len()),
+            if points.len() == 1 { "1 point" } else { "no points" },
             "a curve of at least two points",
             "give the lowest elevation with area 0, the highest with the basin's whole area, and some between",
         ));

@@ -99,6 +99,8 @@ fn bounded(file: impl Read, most: u64) -> io::Result<Vec<u8>> {
 fn described(error: &io::Error, most: u64) -> String {
     match error.kind() {
         ErrorKind::NotFound => "there is no such file".to_owned(),
+        ErrorKind::IsADirectory => "it is a folder, not a file".to_owned(),
+        ErrorKind::PermissionDenied => "you are not allowed to read it".to_owned(),
         ErrorKind::FileTooLarge => format!("the file is longer than {} MiB", most >> 20),
         _ => format!("it cannot be read: {error}"),
     }

@@ -5,6 +5,9 @@ use std::collections::HashMap;
 use std::ops::Range;
 use toml::de::{DeTable, DeValue};
 
+/// More faults of a text as TOML are only counted: it is no scenario that somebody could mend fault by fault.
+const MOST_SYNTAX_FAULTS: usize = 40;
+
 /// Where a key and its value stand, in bytes.
 #[derive(Debug, Clone)]
 struct KeyPlace {
@@ -33,9 +36,16 @@ impl<'t> Document<'t> {
             expected: "TOML: key = value, one a line, under [table] lines".to_owned(),
             mend: "quote texts, write lists in [ ], and name each key once".to_owned(),
         });
-        let syntax_faults = without_echoes(faults.collect());
         let mut places = HashMap::new();
         note_places("", &table, &mut places);
+        let lists = places
+            .values()
+            .map(|place| place.value.clone())
+            .filter(|value| text[value.clone()].starts_with('['));
+        let syntax_faults = match (text.contains('='), faults.collect::<Vec<_>>()) {
+            (false, faults) if !faults.is_empty() => vec![no_scenario(&faults[0])],
+            (_, faults) => at_most(MOST_SYNTAX_FAULTS, without_echoes(faults, &lists.collect::<Vec<_>>())),
+        };
         let line_starts = std::iter::once(0).chain(text.match_indices('\n').map(|(at, _)| at + 1)).collect();
         Self { table, places, syntax_faults, line_starts }
     }
@@ -83,21 +93,48 @@ impl<'t> Document<'t> {
     }
 }
 
+/// The first of very many faults; the rest are counted.
+fn at_most(most: usize, mut faults: Vec<Fault>) -> Vec<Fault> {
+    let more = faults.len().saturating_sub(most);
+    faults.truncate(most);
+    if let Some(last) = faults.last_mut().filter(|_| more > 0) {
+        last.found += &format!(" (and {more} more faults below)");
+    }
+    faults
+}
+
+/// The fault of a text without a single key.
+fn no_scenario(first: &Fault) -> Fault {
+    Fault {
+        place: first.place.clone(),
+        found: "no line of this file is key = value, so it is no scenario".to_owned(),
+        expected: "a scenario in TOML: key = value, one a line, under [table] lines".to_owned(),
+        mend: "name a scenario here; a data file is named within one, by weather.file or basin.bands"
+            .to_owned(),
+    }
+}
+
 /// A list that is never closed makes a fault of every word down to the end of the text. Of those only the first is kept,
 /// where the list ought to have ended.
-fn without_echoes(mut faults: Vec<Fault>) -> Vec<Fault> {
+fn without_echoes(mut faults: Vec<Fault>, lists: &[Range<usize>]) -> Vec<Fault> {
+    let start_of = |fault: &Fault| match &fault.place {
+        Place::Span(bytes) => bytes.start,
+        _ => 0,
+    };
     let is_unclosed = |fault: &Fault| fault.found.starts_with("unclosed array");
     let is_echo = |fault: &Fault| {
         ["missing comma between array", "string values must be quoted", "unexpected `=` in array"]
             .iter()
             .any(|start| fault.found.starts_with(start))
     };
-    faults.sort_by_key(|fault| match &fault.place {
-        Place::Span(bytes) => bytes.start,
-        _ => 0,
-    });
-    if faults.iter().any(is_unclosed) {
-        let echoes = faults.iter().rev().take_while(|fault| is_echo(fault) || is_unclosed(fault)).count();
+    faults.sort_by_key(start_of);
+    if let Some(unclosed) = faults.iter().rfind(|fault| is_unclosed(fault)).map(start_of) {
+        let list = lists.iter().filter(|list| list.end >= unclosed).map(|list| list.start).min().unwrap_or(0);
+        let echoes = faults
+            .iter()
+            .rev()
+            .take_while(|fault| start_of(fault) > list && (is_echo(fault) || is_unclosed(fault)))
+            .count();
         let first = faults.len() - echoes;
         faults.truncate(first + 1);
         if let Some(kept) = faults.get_mut(first) {

@@ -88,12 +88,26 @@ pub fn located(fault: &Fault, drawing: &Drawing<'_>) -> Located {
         column,
         name: shortened(name),
         found: shortened(&fault.found),
-        expected: fault.expected.clone(),
-        mend: fault.mend.clone(),
+        expected: plain(&fault.expected),
+        mend: plain(&fault.mend),
     }
 }
 
+/// A text that holds words of the user's files, without what a terminal would obey.
+fn plain(text: &str) -> String {
+    let mut plain = String::with_capacity(text.len());
+    for sign in text.chars() {
+        match sign {
+            '\t' | '\n' | '\r' => plain.extend(sign.escape_default()),
+            _ if sign.is_control() => plain.push(char::REPLACEMENT_CHARACTER),
+            _ => plain.push(sign),
+        }
+    }
+    plain
+}
+
 fn shortened(text: &str) -> String {
+    let text = &plain(text);
     match text.char_indices().nth(LONGEST_SHOWN) {
         Some((end, _)) => format!("{}...", &text[..end]),
         None => text.to_owned(),
@@ -115,7 +129,7 @@ pub fn draw(faults: &[Fault], drawing: &Drawing<'_>) -> String {
             (_, name) => format!("{name}: {}", place.found),
         };
         let title = Level::ERROR.primary_title(title);
-        let expected = format!("expected {}", fault.expected);
+        let expected = format!("expected {}", place.expected);
         let group = match spot(fault, drawing) {
             Some(spot) => title.element(
                 Snippet::source(spot.text)
@@ -125,7 +139,7 @@ pub fn draw(faults: &[Fault], drawing: &Drawing<'_>) -> String {
             ),
             None => title.element(Level::NOTE.message(expected)),
         };
-        let group = group.element(Level::HELP.message(fault.mend.as_str()));
+        let group = group.element(Level::HELP.message(place.mend.as_str()));
         drawn += &renderer.render(&[group]);
         drawn += "\n\n";
     }

@@ -96,6 +96,15 @@ impl<'d> Section<'d> {
             expected,
             match key.split_once('[') {
                 Some((list, _)) => format!("write {list} as a list of such values, as in the demo scenarios"),
+                None if matches!(value, DeValue::Array(_)) && self.path.is_empty() => {
+                    format!("write [{key}] once, with single brackets")
+                }
+                None if expected == "a number" => {
+                    match value.as_str().and_then(|text| text.trim().parse::<f64>().ok()) {
+                        Some(number) => format!("take the quotes away: {key} = {number}"),
+                        None => format!("write a number alone, without quotes and unit: {key} = ..."),
+                    }
+                }
                 None => format!("write {key} = {}", example_of(expected)),
             },
         ));
@@ -438,7 +447,6 @@ fn described(value: &DeValue<'_>) -> String {
 /// How a value of the expected kind is typed.
 fn example_of(expected: &str) -> &str {
     match expected {
-        "a number" => "2.5",
         "a list of numbers" => "[0, 1, 2]",
         "a text in quotes" => "\"...\"",
         "a list of texts in quotes" => "[\"...\"]",

@@ -20,6 +20,9 @@ const USUAL_FORMS: [&str; 10] = [
     "%d-%b-%Y",
 ];
 
+/// So many dates that read well for each that does not are no mixture.
+const FEW_FAILED: usize = 20;
+
 /// Which columns hold a row's date, and how it is written.
 #[derive(Debug, Clone, PartialEq, Eq, Serialize)]
 pub struct DateColumn {
@@ -73,7 +76,9 @@ impl<'c> DateReader<'c> {
         };
         let expected = format!("a date written as {}", self.form);
         let mut fault = self.fault(table, row, &expected, "");
-        if matches!(error.kind(), ParseErrorKind::OutOfRange | ParseErrorKind::Impossible) {
+        if text.trim().is_empty() {
+            fault.mend = "fill the date in, or take the line out".to_owned();
+        } else if matches!(error.kind(), ParseErrorKind::OutOfRange | ParseErrorKind::Impossible) {
             fault.expected = "a day that the calendar has".to_owned();
             fault.mend = "mend the date, or take the line out".to_owned();
         } else {
@@ -98,14 +103,22 @@ impl<'c> DateReader<'c> {
             .iter()
             .zip(USUAL_FORMS)
             .filter(|(count, _)| self.failed > 0 && **count == self.failed);
-        let fitting: Vec<String> = fits.map(|(_, form)| format!("{form:?}")).collect();
-        let mend = if self.read_well > 0 {
-            let others = self.read_well;
+        let fitting: Vec<&str> = fits.map(|(_, form)| form).collect();
+        let others = self.read_well;
+        let mend = if self.read_well > FEW_FAILED * self.failed {
+            format!("write it as the {others} dates that read well are written")
+        } else if self.read_well > 0 {
             format!("the file mixes forms of dates: write it as the {others} that read well are written")
         } else if fitting.is_empty() {
             "state the file's own form in date = { column, format }, in the signs of strftime".to_owned()
         } else {
-            format!("if the file writes dates so, state format = {} in date", fitting.join(" or "))
+            let forms: Vec<String> = fitting.iter().map(|form| format!("{form:?}")).collect();
+            let hours = if fitting.iter().all(|form| form.contains("%H")) {
+                "; there may be one line a day: of hourly values make daily ones first"
+            } else {
+                ""
+            };
+            format!("if the file writes dates so, state format = {} in date{hours}", forms.join(" or "))
         };
         tally.mend(table.header.get(self.at[0]).unwrap_or(""), &mend);
     }

@@ -22,12 +22,11 @@ impl NoText {
 }
 
 /// First bytes of files that come in place of a table, what they are, and what to do.
-const STRANGERS: [(&[u8], &str, &str); 5] = [
+const STRANGERS: [(&[u8], &str, &str); 4] = [
     (b"PK\x03\x04", "a workbook or another packed file", "open it and save the sheet as CSV"),
     (b"\xd0\xcf\x11\xe0", "an old workbook", "open it and save the sheet as CSV"),
     (b"\x1f\x8b", "a packed file (gzip)", "unpack it"),
     (b"%PDF", "a PDF document", "ask for the table as CSV"),
-    (b"{", "a JSON document", "ask for the table as CSV"),
 ];
 
 /// The text of a file, without its byte-order mark.
@@ -44,7 +43,12 @@ pub fn decode(bytes: Vec<u8>, encoding: Encoding) -> Result<String, NoText> {
         Encoding::Latin1 => WINDOWS_1252.decode_without_bom_handling(&bytes).0.into_owned(),
         Encoding::Utf16 => utf16(&bytes)?,
     };
-    let start = text.trim_start().get(..9).unwrap_or("").to_ascii_lowercase();
+    let start: String = text.trim_start().chars().take(9).collect::<String>().to_ascii_lowercase();
+    if start.starts_with('{')
+        || start.strip_prefix('[').is_some_and(|rest| rest.trim_start().starts_with('{'))
+    {
+        return Err(NoText::new("a JSON document, not a text table", "ask for the table as CSV"));
+    }
     if ["<!doctype", "<html", "<?xml"].iter().any(|page| start.starts_with(page)) {
         return Err(NoText::new(
             "a web page, not a text table",
@@ -56,7 +60,8 @@ pub fn decode(bytes: Vec<u8>, encoding: Encoding) -> Result<String, NoText> {
         let line = line_of(text.as_bytes(), at);
         return Err(NoText::new(
             format!("a NUL byte on line {line}, so it is no plain text"),
-            "export the table again as CSV; if it is UTF-16, state encoding = \"utf-16\"",
+            "if it is UTF-16, two bytes a letter, state encoding = \"utf-16\" where the scenario names the file; else export \
+             the table again as CSV",
         ));
     }
     let long = text.lines().position(|line| line.len() > LONGEST_LINE);
@@ -99,9 +104,12 @@ fn utf16(bytes: &[u8]) -> Result<String, NoText> {
     let (encoding, rest) = match bytes {
         [0xff, 0xfe, rest @ ..] => (UTF_16LE, rest),
         [0xfe, 0xff, rest @ ..] => (UTF_16BE, rest),
+        // A table's signs are ASCII, and one of the two bytes of each is 0.
+        [first, 0, ..] if *first != 0 => (UTF_16LE, bytes),
+        [0, second, ..] if *second != 0 => (UTF_16BE, bytes),
         _ => {
             return Err(NoText::new(
-                "no byte-order mark of UTF-16 at its start",
+                "one byte a letter, so it is no UTF-16",
                 "take encoding out where the scenario names the file: it is most likely UTF-8",
             ));
         }
@@ -133,6 +141,7 @@ mod tests {
         assert_eq!(decode(b"Temp (\xb0C)\n1.5\n".to_vec(), Encoding::Latin1).as_deref(), Ok(text));
         for swap in [false, true] {
             assert_eq!(decode(wide(text, swap), Encoding::Utf16).as_deref(), Ok(text));
+            assert_eq!(decode(wide(text, swap)[2..].to_vec(), Encoding::Utf16).as_deref(), Ok(text));
         }
     }
 }

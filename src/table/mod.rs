@@ -5,16 +5,22 @@ mod decode;
 mod format;
 mod header;
 mod place;
+mod runaway;
 mod tally;
 
 pub use date::{DateColumn, DateReader};
 pub use decode::{NoText, decode};
 pub use format::{Decimal, Encoding, Format, USUAL_MISSING};
+pub use header::joined;
 pub use tally::Tally;
 
 use crate::fault::{Fault, Place};
 use csv::{ReaderBuilder, StringRecord};
+use runaway::LONGEST_RECORD;
 use std::ops::Range;
+
+/// How to mend a cell that holds line breaks and no value.
+const RUNNING_ON: &str = "a quote opens here and closes lines below, if at all: close it, or take it out";
 
 /// A text table whose header has been read.
 pub struct Table<'a> {
@@ -25,6 +31,8 @@ pub struct Table<'a> {
     lines_before: usize,
     format: &'a Format,
     header: StringRecord,
+    /// The header and the blank records above it.
+    records_above_rows: usize,
     header_line: usize,
     header_text: &'a str,
 }
@@ -42,51 +50,45 @@ impl Row<'_> {
     pub fn cell(&self, column: usize) -> &str {
         self.record.get(column).unwrap_or("").trim()
     }
-
-    fn is_blank(&self) -> bool {
-        self.record.iter().all(|cell| cell.trim().is_empty())
-    }
 }
 
 impl<'a> Table<'a> {
     /// Reads remarks and the header of `text`. `file` names the file in faults.
     ///
     /// # Errors
-    /// A file without a header line, or one that is not a table at all.
+    /// A file without a header line or with values in its place, one that is not a table at all, or one with a quote that is
+    /// never closed.
     pub fn open(file: &'a str, text: &'a str, format: &'a Format) -> Result<Self, Fault> {
         let lines_before = format.header_line.map_or(0, |line| line.saturating_sub(1));
         let start: usize = text.split_inclusive('\n').take(lines_before).map(str::len).sum();
         let text = &text[start..];
+        if let Some(line) = runaway::overlong_record(text, format) {
+            return Err(overlong(file, line + lines_before));
+        }
         let mut header = StringRecord::new();
         let mut reader = reader(text, format);
-        match reader.read_record(&mut header) {
-            Ok(true) => {}
-            Ok(false) => {
-                return Err(Fault {
-                    place: Place::File(file.to_owned()),
-                    found: "no header line".to_owned(),
-                    expected: "a line of column names, then one line a row".to_owned(),
-                    mend: match format.header_line {
-                        Some(line) => format!("the file ends before line {line}, which header_line names"),
-                        None => "check that the file was saved whole; remarks above the header must start with the \
-                                 'comment' sign"
-                            .to_owned(),
-                    },
-                });
+        let mut records_above_rows = 0;
+        while is_blank(&header) {
+            records_above_rows += 1;
+            match reader.read_record(&mut header) {
+                Ok(true) => {}
+                Ok(false) => return Err(no_header(file, format)),
+                Err(error) => return Err(unreadable(file, &error)),
             }
-            Err(error) => return Err(unreadable(file, &error)),
         }
         let (header_line, header_text) = place::line_at(text, header.position(), format.comment);
         header.trim();
-        Ok(Self {
+        let table = Self {
             file,
             text,
             lines_before,
             format,
             header,
+            records_above_rows,
             header_line: header_line + lines_before,
             header_text,
-        })
+        };
+        if table.starts_with_values() { Err(table.no_names()) } else { Ok(table) }
     }
 
     /// The column of a name.
@@ -110,14 +112,27 @@ impl<'a> Table<'a> {
     /// The rows below the header that are not blank, each as it was read or the fault that kept it from being read. Blank
     /// cells beyond the header's, as a separator at the line's end makes them, are let pass.
     pub fn rows(&self) -> impl Iterator<Item = Result<Row<'a>, Fault>> + '_ {
-        let mut rows = reader(self.text, self.format).into_records();
-        rows.next();
-        rows.map(|record| {
-            let record = record.map_err(|error| unreadable(self.file, &error))?;
-            let (line, text) = place::line_at(self.text, record.position(), self.format.comment);
-            Ok(Row { line: line + self.lines_before, text, record })
+        let mut reader = reader(self.text, self.format);
+        let mut records_to_skip = self.records_above_rows;
+        let mut record = StringRecord::new();
+        std::iter::from_fn(move || {
+            loop {
+                match reader.read_record(&mut record) {
+                    Ok(false) => return None,
+                    Err(error) => return Some(Err(unreadable(self.file, &error))),
+                    Ok(true) if records_to_skip > 0 => records_to_skip -= 1,
+                    Ok(true) if is_blank(&record) => {}
+                    Ok(true) => {
+                        let (line, text) = place::line_at(self.text, record.position(), self.format.comment);
+                        return Some(Ok(Row {
+                            line: line + self.lines_before,
+                            text,
+                            record: record.clone(),
+                        }));
+                    }
+                }
+            }
         })
-        .filter(|row| row.as_ref().map_or(true, |row| !row.is_blank()))
         .map(|row| row.and_then(|row| self.with_enough_cells(row)))
     }
 
@@ -126,19 +141,22 @@ impl<'a> Table<'a> {
         if row.record.len() >= cells && row.record.iter().skip(cells).all(|cell| cell.trim().is_empty()) {
             return Ok(row);
         }
-        let more = row.record.len() > cells;
+        let found = row.record.len();
+        let mend = if row.record.iter().any(|cell| cell.contains('\n')) {
+            RUNNING_ON
+        } else if found > cells && self.format.separator == b',' {
+            "if numbers have decimal commas, export the table with another separator, or with such numbers in quotes; else \
+             take out what is too many"
+        } else if found > cells {
+            "take out what is too many, and check the quotes of this line"
+        } else {
+            "check the quotes of this line, and that the file was saved whole"
+        };
         Err(Fault {
             place: self.place(row.line, row.text, "", 0..row.text.len()),
-            found: format!("{} cells", row.record.len()),
+            found: if found == 1 { "1 cell".to_owned() } else { format!("{found} cells") },
             expected: format!("{cells} cells, as in the header"),
-            mend: if more && self.format.separator == b',' {
-                "if numbers have decimal commas, export the table with another separator, or with such numbers in quotes"
-            } else if more {
-                "check the quotes of this line"
-            } else {
-                "check the quotes of this line, and that the file was saved whole"
-            }
-            .to_owned(),
+            mend: mend.to_owned(),
         })
     }
 
@@ -152,10 +170,10 @@ impl<'a> Table<'a> {
             return Ok(None);
         }
         let expected = "a number or a mark for 'not measured'";
-        self.format
-            .number(cell)
-            .map(Some)
-            .ok_or_else(|| self.cell_fault(row, column, expected, self.mend_of_number(cell)))
+        let mend = self
+            .mend_of_sign(cell)
+            .unwrap_or("if it is such a mark, add it to 'missing' where the scenario names the file");
+        self.format.number(cell).map(Some).ok_or_else(|| self.cell_fault(row, column, expected, mend))
     }
 
     /// The number in a cell that must hold one.
@@ -164,32 +182,35 @@ impl<'a> Table<'a> {
     /// A cell that does not.
     pub fn required_number(&self, row: &Row<'_>, column: usize) -> Result<f64, Fault> {
         let cell = row.cell(column);
-        let mend =
-            if cell.is_empty() { "fill it in, or take the line out" } else { self.mend_of_number(cell) };
+        let mend = self.mend_of_sign(cell).unwrap_or("fill it in, or take the line out");
         self.format.number(cell).ok_or_else(|| self.cell_fault(row, column, "a number", mend))
     }
 
-    fn mend_of_number(&self, cell: &str) -> &'static str {
+    /// How to mend a number whose signs are not the declared ones.
+    fn mend_of_sign(&self, cell: &str) -> Option<&'static str> {
         let swapped = match self.format.decimal {
             Decimal::Point => Format { decimal: Decimal::Comma, ..Format::default() },
             Decimal::Comma => Format::default(),
         };
         let is_number = |text: &str| swapped.number(text).is_some();
         match self.format.decimal {
-            _ if cell.contains('.') && cell.contains(',') => "write it without a sign between thousands",
+            _ if cell.contains('.') && cell.contains(',') => {
+                Some("write it without a sign between thousands")
+            }
             Decimal::Point if is_number(cell) => {
-                "if that is a decimal comma, state decimal = \",\" where the scenario names the file"
+                Some("if that is a decimal comma, state decimal = \",\" where the scenario names the file")
             }
             Decimal::Comma if is_number(cell) => {
-                "if that is a decimal point, take decimal = \",\" out where the scenario names the file"
+                Some("if that is a decimal point, take decimal = \",\" out where the scenario names the file")
             }
-            _ => "if it is such a mark, add it to 'missing' where the scenario names the file",
+            _ => None,
         }
     }
 
     /// A fault in one cell.
     pub fn cell_fault(&self, row: &Row<'_>, column: usize, expected: &str, mend: &str) -> Fault {
         let bytes = place::cell_bytes(row.text, column, self.format.separator);
+        let mend = if row.cell(column).contains('\n') { RUNNING_ON } else { mend };
         Fault {
             place: self.place(row.line, row.text, self.header.get(column).unwrap_or(""), bytes),
             found: format!("'{}'", row.cell(column)),
@@ -221,6 +242,35 @@ fn reader<'t>(text: &'t str, format: &Format) -> csv::Reader<&'t [u8]> {
         .delimiter(format.separator)
         .comment(format.comment)
         .from_reader(text.as_bytes())
+}
+
+fn is_blank(record: &StringRecord) -> bool {
+    record.iter().all(|cell| cell.trim().is_empty())
+}
+
+fn no_header(file: &str, format: &Format) -> Fault {
+    Fault {
+        place: Place::File(file.to_owned()),
+        found: "no header line".to_owned(),
+        expected: "a line of column names, then one line a row".to_owned(),
+        mend: match format.header_line {
+            Some(line) => format!("the file ends before line {line}, which header_line names"),
+            None => "check that the file was saved whole; remarks above the header must start with the 'comment' sign"
+                .to_owned(),
+        },
+    }
+}
+
+fn overlong(file: &str, line: usize) -> Fault {
+    Fault {
+        place: Place::File(file.to_owned()),
+        found: format!(
+            "a quote on line {line} opens a cell that does not end within {} KiB",
+            LONGEST_RECORD >> 10
+        ),
+        expected: "rows of a line each, or of a few where cells hold line breaks".to_owned(),
+        mend: format!("close the quote on line {line}, or take it out"),
+    }
 }
 
 fn unreadable(file: &str, error: &csv::Error) -> Fault {

@@ -55,7 +55,9 @@ impl Tally {
             if column.count > SHOWN_PER_COLUMN {
                 let more = column.count - SHOWN_PER_COLUMN;
                 let plural = if more == 1 { "" } else { "s" };
-                self.faults[column.last].found += &format!(" (and {more} more fault{plural} in this column)");
+                let last = &mut self.faults[column.last];
+                let whose = if column_of(last).is_empty() { "of this kind" } else { "in this column" };
+                last.found += &format!(" (and {more} more fault{plural} {whose})");
             }
         }
         self.faults

@@ -3,7 +3,7 @@
 use super::columns::{Columns, Gauge, TemperatureColumns};
 use crate::calendar::days_between;
 use crate::fault::Fault;
-use crate::table::{DateReader, Row, Table, Tally};
+use crate::table::{DateReader, Row, Table, Tally, joined};
 use chrono::NaiveDate;
 use std::collections::BTreeMap;
 
@@ -57,19 +57,19 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
     let (mut dates, places) = find(&table, columns)?;
     let mut tally = Tally::default();
     let mut lines: Vec<Line> = Vec::new();
-    for row in table.rows() {
+    for (number, row) in table.rows().enumerate() {
+        if number == LONGEST_RECORD_DAYS {
+            tally.push(table.file_fault(
+                "more lines than 400 years have days",
+                "one line a day",
+                "of hourly values make daily ones first",
+            ));
+            break;
+        }
         let Some(row) = tally.keep(row) else { continue };
         let date = dates.read(&table, &row, &mut tally);
         let measured = read_row(&table, &row, columns, &places, &mut tally);
         lines.extend(date.map(|date| Line { date, number: row.line, measured }));
-        if lines.len() > LONGEST_RECORD_DAYS {
-            tally.push(table.file_fault(
-                "more lines than 400 years have days",
-                "one line a day",
-                "check the file",
-            ));
-            break;
-        }
     }
     dates.finish(&table, &mut tally);
     if lines.first().map(|line| line.date) > lines.last().map(|line| line.date) {
@@ -81,7 +81,11 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
     }
     match lines.first() {
         Some(first) => Ok(in_order(first.date, &lines)),
-        None => Err(vec![table.file_fault("no rows below the header", "one line a day", "check the file")]),
+        None => Err(vec![table.file_fault(
+            "no rows below the header",
+            "one line a day",
+            "check that the file was saved or downloaded whole",
+        )]),
     }
 }
 
@@ -96,10 +100,8 @@ fn find<'c>(table: &Table<'_>, columns: &'c Columns) -> Result<(DateReader<'c>, 
             (Ok(dates), Ok(temperatures), Ok(gauge)) => (dates, temperatures, gauge),
             (dates, _, gauge) => {
                 let of_dates = dates.err().into_iter().flatten();
-                return Err(of_dates
-                    .chain(found.into_iter().filter_map(Result::err))
-                    .chain(gauge.err())
-                    .collect());
+                let all = of_dates.chain(found.into_iter().filter_map(Result::err)).chain(gauge.err());
+                return Err(joined(all.collect()));
             }
         };
     let mut used = [dates.columns(), &temperatures, &[gauge]].concat();

@@ -1,11 +1,13 @@
 //! The weather record: from the cells of a station's file to whole, screened water years of daily weather.
 //!
-//! `columns` says which column holds what, `days` reads the cells, `sift` takes out what cannot be weather, `gauge` turns an accumulating gauge's readings into daily amounts, `gaps` fills short
+//! `columns` says which column holds what, `days` reads the cells, `declared` asks what they would be in another unit, `sift`
+//! takes out what cannot be weather, `gauge` turns an accumulating gauge's readings into daily amounts, `gaps` fills short
 //! temperature gaps, `years` decides which water years can be used, `record` ties them together, and `series` is what
 //! the engine and the generators read.
 
 mod columns;
 mod days;
+mod declared;
 mod gaps;
 mod gauge;
 mod plausible;

@@ -16,10 +16,8 @@ pub struct Means {
     pub precipitation_mm: f64,
 }
 
-/// Yearly precipitation beyond these is rarely measured where snow is run, mm.
-const USUAL_PRECIPITATION_MM: std::ops::RangeInclusive<f64> = 100.0..=6000.0;
-/// A yearly mean beyond these is not a mountain station's in degC.
-const USUAL_YEAR_C: std::ops::RangeInclusive<f64> = -25.0..=20.0;
+/// Of fewer water years than this the chance of the weather is hardly known.
+const FEW_YEARS: usize = 10;
 /// Noise of a gauge above this share of what it caught is no noise.
 const MOST_NOISE: f64 = 0.1;
 
@@ -43,18 +41,19 @@ impl Record {
     /// What about the record is unlikely; the limits are common practice.
     pub fn unlikely(&self, is_southern: bool) -> Vec<Unlikely> {
         let means = self.means();
-        let mut found = Vec::new();
+        let mut found = self.declared.unlikely();
         let mut say = |about: &str, why: String| found.push(Unlikely::new(about, why));
-        if !USUAL_YEAR_C.contains(&means.year_c) {
-            let why = format!("the yearly mean is {:.1} degC: is the column's unit right?", means.year_c);
-            say("weather temperature", why);
-        }
-        if !USUAL_PRECIPITATION_MM.contains(&means.precipitation_mm) {
-            let amount = means.precipitation_mm;
-            say(
-                "weather.precipitation",
-                format!("{amount:.0} mm a year: are its unit and its gauge, daily or accumulating, right?"),
-            );
+        match self.series.years.len() {
+            1 => say(
+                "weather.file",
+                "one water year is in use, so every realization is that year over and over and chance has no spread"
+                    .to_owned(),
+            ),
+            few if few < FEW_YEARS => say(
+                "weather.file",
+                format!("only {few} water years are in use: the spread of realizations hardly holds what chance can do"),
+            ),
+            _ => {}
         }
         if let Some(gauge) = self.counts.gauge
             && gauge.small_falls_mm > MOST_NOISE * means.precipitation_mm * self.series.years.len() as f64

@@ -2,12 +2,13 @@
 
 use super::columns::{Columns, Gauge, TemperatureColumns};
 use super::days::read_days;
+use super::declared::Declared;
 use super::gaps;
 use super::gauge::{GaugeCount, daily_amounts};
 use super::series::Series;
 use super::sift::{sift, sift_amounts};
 use super::suspicious::Suspicion;
-use super::years::{Limits, Screening, SkippedYear};
+use super::years::{Limits, Screening, SkippedYear, Why};
 use crate::calendar::{MonthDay, WaterYearStart, date_of};
 use crate::fault::Fault;
 use crate::units::UnitSystem;
@@ -58,6 +59,8 @@ pub struct Record {
     pub suspicions: Vec<Suspicion>,
     /// Whether the record has daily minima and maxima.
     pub has_daily_range: bool,
+    /// The columns as they were declared.
+    pub(super) declared: Declared,
 }
 
 /// Reads a station's file and makes whole water years of it.
@@ -75,6 +78,7 @@ pub fn read(
     limits: Limits,
 ) -> Result<Record, Vec<Fault>> {
     let mut days = read_days(file, text, columns)?;
+    let declared = Declared::of(&days, columns);
     let sifted = sift(&mut days, columns, &limits);
     let (amounts, gauge) = match columns.precipitation.gauge {
         Gauge::Daily => (days.gauge_mm.clone(), None),
@@ -107,7 +111,7 @@ pub fn read(
     };
     let (usable, skipped) = screening.sort_years();
     if usable.is_empty() {
-        return Err(vec![nothing_usable(file, &skipped)]);
+        return Err(vec![nothing_usable(file, &skipped, &declared)]);
     }
 
     let mut series = Series::default();
@@ -138,10 +142,10 @@ pub fn read(
         last_year = Some(year.water_year);
     }
     let has_daily_range = matches!(columns.temperature, TemperatureColumns::Extremes { .. });
-    Ok(Record { series, skipped, counts, suspicions, has_daily_range })
+    Ok(Record { series, skipped, counts, suspicions, has_daily_range, declared })
 }
 
-fn nothing_usable(file: &str, skipped: &[SkippedYear]) -> Fault {
+fn nothing_usable(file: &str, skipped: &[SkippedYear], declared: &Declared) -> Fault {
     let mut found = String::from("no water year that can be used");
     for year in skipped.iter().take(5) {
         let why: Vec<String> = year.why.iter().map(|why| why.words(UnitSystem::Metric)).collect();
@@ -150,12 +154,25 @@ fn nothing_usable(file: &str, skipped: &[SkippedYear]) -> Fault {
     if skipped.len() > 5 {
         found += &format!("; and {} more", skipped.len() - 5);
     }
+    let slips = declared.unlikely();
+    let is_short =
+        skipped.iter().flat_map(|year| &year.why).all(|why| matches!(why, Why::BeyondRecord { .. }));
+    let mend = if let [_, ..] = slips.as_slice() {
+        let slips: Vec<String> =
+            slips.iter().map(|slip| format!("check {}: {}", slip.about, slip.why)).collect();
+        slips.join("; ")
+    } else if is_short {
+        "bring a longer record, or set water_year_starts in [season] to the month and day it can start on"
+            .to_owned()
+    } else {
+        "check units, missing marks and 'water_year_starts'; the limits temperature_gap_days and \
+         missing_days_allowed stand in [weather]"
+            .to_owned()
+    };
     Fault {
         place: crate::fault::Place::File(file.to_owned()),
         found,
         expected: "at least one whole water year of temperature and precipitation".to_owned(),
-        mend: "check units, missing marks and 'water_year_starts'; the limits temperature_gap_days and \
-               missing_days_allowed stand in [weather]"
-            .to_owned(),
+        mend,
     }
 }

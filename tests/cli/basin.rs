@@ -60,6 +60,10 @@ impl Basin {
         fs::write(self.path().join(name), text).unwrap();
     }
 
+    pub fn write_bytes(&self, name: &str, bytes: impl AsRef<[u8]>) {
+        fs::write(self.path().join(name), bytes).unwrap();
+    }
+
     pub fn read(&self, name: &str) -> String {
         fs::read_to_string(self.path().join(name)).unwrap()
     }

@@ -30,7 +30,7 @@ error: area_km2: 'NaN'
 3 | 2200,2800,NaN
   |           ^^^ expected a number
   |
-  = help: if it is such a mark, add it to 'missing' where the scenario names the file
+  = help: fill it in, or take the line out
 
 error: precip_mm: 'trace'
  --> weather.csv:3:21
@@ -54,7 +54,7 @@ error: date: '24.12.2000'
 86 | 24.12.2000,-12.3,-2.3,6.0
    | ^^^^^^^^^^ expected a date written as %Y-%m-%d
    |
-   = help: the file mixes forms of dates: write it as the 1094 that read well are written
+   = help: write it as the 1094 dates that read well are written
 
 error: precip_mm: '-9.0'
    --> weather.csv:370:21

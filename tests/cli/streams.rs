@@ -104,7 +104,7 @@ fn plain_lines_off_a_terminal() {
 #[cfg(target_os = "linux")]
 fn closed_pipe_and_full_disk() {
     let basin = Basin::new();
-    let shell = format!("{} daily scenario.toml | head -1", env!("CARGO_BIN_EXE_thawline"));
+    let shell = format!("{} daily scenario.toml --quiet | head -1", env!("CARGO_BIN_EXE_thawline"));
     let piped = Command::new("sh").arg("-c").arg(shell).current_dir(basin.path()).output().unwrap();
     assert!(piped.status.success() && piped.stderr.is_empty(), "{piped:?}");
     for words in ["check", "daily"] {
