@@ -39,6 +39,9 @@ pub const SIGNIFICANT_BELOW_P: f64 = 0.05;
 /// A trend is drawn out beyond the record's own years by no more than this without a word, years.
 const DETREND_REACH_YEARS: i32 = 5;
 
+/// A smaller trend of temperature is not worth a word, however significant, degC per decade.
+const LEAST_TREND_C_PER_DECADE: f64 = 0.1;
+
 /// Quantile of the standard normal distribution at 0.975.
 const NORMAL_975: f64 = 1.959_963_984_540_054;
 
@@ -102,11 +105,10 @@ impl Baseline {
         let mut found = Vec::new();
         let seasons = [("cool", &self.cool_temperature), ("warm", &self.warm_temperature)];
         for (season, tests) in seasons {
-            let Some(tests) = tests.as_ref().filter(|tests| tests.mann_kendall.is_significant()) else {
-                continue;
-            };
-            if detrend_to.is_none() {
-                let per_decade_c = 10.0 * tests.theil_sen.slope_per_year;
+            let Some(tests) = tests else { continue };
+            let per_decade_c = 10.0 * tests.theil_sen.slope_per_year;
+            let is_large = per_decade_c.abs() >= LEAST_TREND_C_PER_DECADE;
+            if detrend_to.is_none() && is_large && tests.mann_kendall.is_significant() {
                 found.push(Unlikely::new(
                     "weather temperature",
                     format!(
