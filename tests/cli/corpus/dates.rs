@@ -298,8 +298,7 @@ unlikely: weather.date: 3 times 29 February, which has no line in any leap year;
 unlikely: weather.file: one water year is in use, so every realization is that year over and over and chance has no spread
 
 ## 200 years
-unlikely: weather temperature: the cool season has a trend of +0.00 degC per decade, so its years do not stand for one climate. If no change of sensor made it, detrend_to = 2100 in [weather] takes it out
-unlikely: weather temperature: the warm season has a trend of -0.00 degC per decade, so its years do not stand for one climate. If no change of sensor made it, detrend_to = 2100 in [weather] takes it out
+
 
 ## a year missing
 ");
