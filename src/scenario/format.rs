@@ -26,9 +26,7 @@ pub(super) fn read_layout(section: &mut Section<'_>) -> Option<Format> {
     let decimal = named(section, "decimal", &Decimal::NAMES, ".");
     let comment = section.text_or("comment", "#");
     let encoding = named(section, "encoding", &Encoding::NAMES, "utf-8");
-    let header_line =
-        section.has("header_line").then(|| section.whole_or("header_line", 1, 1..=FARTHEST_HEADER) as usize);
-    section.knows("header_line");
+    let header_line = section.whole_in("header_line", 1..=FARTHEST_HEADER, 12).map(|line| line as usize);
     let separator = one_byte(section, "separator", &separator);
     let comment =
         if comment.is_empty() { Some(None) } else { one_byte(section, "comment", &comment).map(Some) };

@@ -1,6 +1,6 @@
 //! The scenario: what was typed becomes the plain types that the rooms below own and check.
 //!
-//! `document` parses the text and remembers where every key stands; `section` reads typed values and collects every
+//! `document` parses the text and remembers where every key stands; `section`, `numbers` and `texts` read typed values and collect every
 //! fault and every default in force; one file a table of the scenario; `draw` shows faults in their place. Only `cli`
 //! imports this room.
 
@@ -13,6 +13,7 @@ mod hypsometry;
 mod levels;
 mod nearest;
 mod notes;
+mod numbers;
 mod observed;
 mod precipitation_change;
 mod realizations;
@@ -20,6 +21,7 @@ mod report;
 mod season;
 mod section;
 mod snow;
+mod texts;
 mod warming;
 mod weather;
 

@@ -1,5 +1,6 @@
 //! `precipitation_change_pct_per_c`, or `precipitation_change_pct` as stated for levels and months.
 
+use super::numbers::Nested;
 use super::section::Section;
 use crate::fault::Fault;
 use crate::perturb::{PrecipitationChange, StatedChange};
@@ -117,12 +118,4 @@ fn stated(
         return None;
     }
     Some(PrecipitationChange::PctByLevel(changes))
-}
-
-/// A number, a list of numbers, or a list of such lists.
-#[derive(Debug, Clone, PartialEq)]
-pub(super) enum Nested {
-    One(f64),
-    List(Vec<f64>),
-    Lists(Vec<Vec<f64>>),
 }

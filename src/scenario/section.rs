@@ -3,9 +3,7 @@
 use super::document::Document;
 use super::nearest::nearest;
 use super::notes::{DefaultInForce, Notes};
-use super::precipitation_change::Nested;
 use crate::fault::{Fault, Place, Unlikely};
-use std::ops::RangeInclusive;
 use toml::de::{DeTable, DeValue};
 
 /// A table of the scenario while it is read.
@@ -110,7 +108,7 @@ impl<'d> Section<'d> {
         ));
     }
 
-    fn missing(&self, key: &str, expected: &str, mend: &str) {
+    pub(super) fn missing(&self, key: &str, expected: &str, mend: &str) {
         if self.table.is_some() {
             self.fault(Fault::key(self.path_of(key), format!("no '{key}'"), expected, mend));
         }
@@ -182,221 +180,6 @@ impl<'d> Section<'d> {
         self.section(key)
     }
 
-    /// A number, if one was typed; NaN and infinities are faults.
-    pub fn number(&mut self, key: &'static str) -> Option<f64> {
-        let value = self.value(key)?;
-        let number = finite(value);
-        if number.is_none() {
-            self.wrong_type(key, value, "a number");
-        }
-        number
-    }
-
-    /// A number within a range, or its default.
-    pub fn number_or(
-        &mut self,
-        key: &'static str,
-        default: f64,
-        range: RangeInclusive<f64>,
-        mend: &str,
-    ) -> f64 {
-        if !self.has(key) {
-            self.value(key);
-            self.default(key, default);
-            return default;
-        }
-        self.number_in(key, range, mend).unwrap_or(default)
-    }
-
-    /// A number within a range, if one was typed.
-    pub fn number_in(&mut self, key: &'static str, range: RangeInclusive<f64>, mend: &str) -> Option<f64> {
-        let number = self.number(key)?;
-        if range.contains(&number) {
-            return Some(number);
-        }
-        let expected = format!("a number from {} to {}", range.start(), range.end());
-        self.fault(Fault::key(self.path_of(key), number, expected, mend));
-        None
-    }
-
-    /// A number within a range that must be there.
-    pub fn required_number(
-        &mut self,
-        key: &'static str,
-        range: RangeInclusive<f64>,
-        mend: &str,
-    ) -> Option<f64> {
-        if !self.has(key) {
-            self.value(key);
-            self.missing(key, "a number", mend);
-            return None;
-        }
-        self.number_in(key, range, mend)
-    }
-
-    /// A whole number within a range, or its default.
-    pub fn whole_or(&mut self, key: &'static str, default: u64, range: RangeInclusive<u64>) -> u64 {
-        let Some(value) = self.value(key) else {
-            self.default(key, default);
-            return default;
-        };
-        let whole = match value {
-            DeValue::Integer(integer) => u64::from_str_radix(integer.as_str(), integer.radix()).ok(),
-            _ => None,
-        };
-        match whole.filter(|whole| range.contains(whole)) {
-            Some(whole) => whole,
-            None => {
-                let expected = format!("a whole number from {} to {}", range.start(), range.end());
-                self.fault(Fault::key(
-                    self.path_of(key),
-                    described(value),
-                    expected,
-                    format!("for example {default}"),
-                ));
-                default
-            }
-        }
-    }
-
-    /// A list of numbers, if one was typed.
-    pub fn numbers(&mut self, key: &'static str) -> Option<Vec<f64>> {
-        let value = self.value(key)?;
-        let DeValue::Array(array) = value else {
-            self.wrong_type(key, value, "a list of numbers");
-            return None;
-        };
-        let mut numbers = Vec::with_capacity(array.len());
-        for (at, element) in array.iter().enumerate() {
-            match finite(element.get_ref()) {
-                Some(number) => numbers.push(number),
-                None => self.wrong_type(&format!("{key}[{at}]"), element.get_ref(), "a number"),
-            }
-        }
-        (numbers.len() == array.len()).then_some(numbers)
-    }
-
-    /// A number, a list of numbers or a list of lists of numbers, if one was typed.
-    pub fn nested_numbers(&mut self, key: &'static str) -> Option<Nested> {
-        const EXPECTED: &str = "a number, a list of numbers, or a list of lists of numbers";
-        let value = self.value(key)?;
-        let list = |value: &DeValue<'_>| match value {
-            DeValue::Array(array) => array.iter().map(|element| finite(element.get_ref())).collect(),
-            _ => None,
-        };
-        let nested = match value {
-            DeValue::Array(array) if array.iter().any(|element| element.get_ref().is_array()) => {
-                array.iter().map(|element| list(element.get_ref())).collect::<Option<_>>().map(Nested::Lists)
-            }
-            DeValue::Array(_) => list(value).map(Nested::List),
-            other => finite(other).map(Nested::One),
-        };
-        if nested.is_none() {
-            self.wrong_type(key, value, EXPECTED);
-        }
-        nested
-    }
-
-    /// Twelve numbers, January first, if they were typed; with `or_one`, one number for all months will do.
-    pub fn monthly(&mut self, key: &'static str, or_one: bool) -> Option<[f64; 12]> {
-        if or_one && self.value(key).is_some_and(|value| !matches!(value, DeValue::Array(_))) {
-            return self.number(key).map(|number| [number; 12]);
-        }
-        let numbers = self.numbers(key)?;
-        let found = numbers.len();
-        let twelve = <[f64; 12]>::try_from(numbers).ok();
-        if twelve.is_none() {
-            self.fault(Fault::key(
-                self.path_of(key),
-                format!("{found} numbers"),
-                "twelve numbers, January first",
-                "give one a month",
-            ));
-        }
-        twelve
-    }
-
-    /// A text, if one was typed.
-    pub fn text(&mut self, key: &'static str) -> Option<&'d str> {
-        let value = self.value(key)?;
-        let text = value.as_str();
-        if text.is_none() {
-            self.wrong_type(key, value, "a text in quotes");
-        }
-        text
-    }
-
-    /// A text that must be there and not be empty.
-    pub fn required_text(&mut self, key: &'static str, expected: &str, mend: &str) -> Option<String> {
-        if !self.has(key) {
-            self.value(key);
-            self.missing(key, expected, mend);
-            return None;
-        }
-        let text = self.text(key)?;
-        if text.trim().is_empty() {
-            self.fault(Fault::key(self.path_of(key), "an empty text", expected, mend));
-            return None;
-        }
-        Some(text.to_owned())
-    }
-
-    /// A text, or its default.
-    pub fn text_or(&mut self, key: &'static str, default: &str) -> String {
-        if !self.has(key) {
-            self.value(key);
-            self.default(key, format!("{default:?}"));
-            return default.to_owned();
-        }
-        self.text(key).unwrap_or(default).to_owned()
-    }
-
-    /// A list of texts, if one was typed.
-    pub fn texts(&mut self, key: &'static str) -> Option<Vec<String>> {
-        let value = self.value(key)?;
-        let texts: Option<Vec<String>> = match value {
-            DeValue::Array(array) => {
-                array.iter().map(|element| element.get_ref().as_str().map(str::to_owned)).collect()
-            }
-            _ => None,
-        };
-        if texts.is_none() {
-            self.wrong_type(key, value, "a list of texts in quotes");
-        }
-        texts
-    }
-
-    /// One of several words, if one was typed.
-    pub fn choice<T: Copy>(&mut self, key: &'static str, choices: &[(&'static str, T)]) -> Option<T> {
-        let typed = self.text(key)?;
-        if let Some((_, choice)) = choices.iter().find(|(word, _)| *word == typed) {
-            return Some(*choice);
-        }
-        let words: Vec<String> = choices.iter().map(|(word, _)| format!("{word:?}")).collect();
-        let mend = match nearest(typed, choices.iter().map(|(word, _)| *word)) {
-            Some(word) => format!("did you mean {word:?}?"),
-            None => "take one of these".to_owned(),
-        };
-        self.fault(Fault::key(self.path_of(key), format!("{typed:?}"), words.join(" or "), mend));
-        None
-    }
-
-    /// One of several words that must be there.
-    pub fn required_choice<T: Copy>(
-        &mut self,
-        key: &'static str,
-        choices: &[(&'static str, T)],
-    ) -> Option<T> {
-        if self.has(key) {
-            return self.choice(key, choices);
-        }
-        self.knows(key);
-        let words: Vec<String> = choices.iter().map(|(word, _)| format!("{word:?}")).collect();
-        let mend = format!("add {key} = {}", words.first().map_or("", String::as_str));
-        self.missing(key, &words.join(" or "), &mend);
-        None
-    }
-
     /// Faults every key that was not asked for, naming the nearest that was.
     pub fn finish(self) {
         for key in self.table.into_iter().flat_map(|table| table.keys()) {
@@ -421,18 +204,7 @@ impl<'d> Section<'d> {
     }
 }
 
-fn finite(value: &DeValue<'_>) -> Option<f64> {
-    match value {
-        DeValue::Integer(integer) => {
-            i64::from_str_radix(integer.as_str(), integer.radix()).ok().map(|n| n as f64)
-        }
-        DeValue::Float(float) => float.as_str().parse().ok(),
-        _ => None,
-    }
-    .filter(|number: &f64| number.is_finite())
-}
-
-fn described(value: &DeValue<'_>) -> String {
+pub(super) fn described(value: &DeValue<'_>) -> String {
     match value {
         DeValue::String(text) => format!("the text {text:?}"),
         DeValue::Integer(integer) => integer.as_str().to_owned(),

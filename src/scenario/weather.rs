@@ -65,16 +65,16 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
             0.0..=100.0,
             "degC by which a season's mean may differ from the record's median; 6 is the default",
         ),
-        stuck_temperature_days: None,
+        stuck_temperature_days: section
+            .whole_in("stuck_temperature_days", 3..=366, 10)
+            .map(|days| days as usize),
         temperature_departure_c: section.number_in(
             "temperature_departure_c",
             5.0..=200.0,
             "degC from the median of the time of year beyond which a temperature is taken as missing; 25 is common",
         ),
     };
-    let detrend_to =
-        section.has("detrend_to").then(|| section.whole_or("detrend_to", 2005, 1700..=2200) as i32);
-    section.knows("detrend_to");
+    let detrend_to = section.whole_in("detrend_to", 1700..=2200, 2005).map(|year| year as i32);
     section.finish();
     Some(WeatherTyped {
         file: file?,

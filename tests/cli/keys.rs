@@ -186,6 +186,32 @@ fn a_failing_sensor_is_said_and_left_out_where_asked() {
     );
 }
 
+/// Twenty days at one temperature are said; asked for, they are missing, and cost their year.
+#[test]
+fn a_stuck_sensor_is_said_and_left_out_where_asked() {
+    let basin = Basin::new();
+    let stuck = |line: &str| -> String {
+        if line.starts_with("2003-03-1") || line.starts_with("2003-03-2") {
+            let cells: Vec<&str> = line.split(',').collect();
+            format!("{},0.0,0.0,{}\n", cells[0], cells[3])
+        } else {
+            format!("{line}\n")
+        }
+    };
+    basin.write("weather.csv", &weather(4).lines().map(stuck).collect::<String>());
+    let checked = basin.run("check scenario.toml").stdout.split_whitespace().collect::<Vec<_>>().join(" ");
+    for column in ["tmin", "tmax"] {
+        let said = format!(
+            "weather.{column}: 20 values in runs of 10 or more days on which it did not change; the first on 2003-03-10"
+        );
+        assert!(checked.contains(&said), "{checked}");
+    }
+    basin.exchange("station_elevation_m = 2000", "station_elevation_m = 2000\nstuck_temperature_days = 10");
+    let document = json(&basin.run("check scenario.toml --json").stdout);
+    assert_eq!(document["record"]["stuck_temperature_cells"], 40);
+    assert_eq!(document["water_years_in_use"], serde_json::json!([2001, 2002, 2004]));
+}
+
 /// The same record in another agency's dress: dates in three columns, semicolons, decimal commas, prose above the header,
 /// the newest day first, a mark for traces.
 #[test]

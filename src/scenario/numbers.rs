@@ -1,0 +1,162 @@
+//! Numbers of a scenario's table: alone, in lists, within ranges.
+
+use super::section::{Section, described};
+use crate::fault::Fault;
+use std::ops::RangeInclusive;
+use toml::de::DeValue;
+
+/// A number, a list of numbers, or a list of such lists.
+#[derive(Debug, Clone, PartialEq)]
+pub(super) enum Nested {
+    One(f64),
+    List(Vec<f64>),
+    Lists(Vec<Vec<f64>>),
+}
+
+impl Section<'_> {
+    /// A number, if one was typed; NaN and infinities are faults.
+    pub fn number(&mut self, key: &'static str) -> Option<f64> {
+        let value = self.value(key)?;
+        let number = finite(value);
+        if number.is_none() {
+            self.wrong_type(key, value, "a number");
+        }
+        number
+    }
+
+    /// A number within a range, or its default.
+    pub fn number_or(
+        &mut self,
+        key: &'static str,
+        default: f64,
+        range: RangeInclusive<f64>,
+        mend: &str,
+    ) -> f64 {
+        if !self.has(key) {
+            self.value(key);
+            self.default(key, default);
+            return default;
+        }
+        self.number_in(key, range, mend).unwrap_or(default)
+    }
+
+    /// A number within a range, if one was typed.
+    pub fn number_in(&mut self, key: &'static str, range: RangeInclusive<f64>, mend: &str) -> Option<f64> {
+        let number = self.number(key)?;
+        if range.contains(&number) {
+            return Some(number);
+        }
+        let expected = format!("a number from {} to {}", range.start(), range.end());
+        self.fault(Fault::key(self.path_of(key), number, expected, mend));
+        None
+    }
+
+    /// A number within a range that must be there.
+    pub fn required_number(
+        &mut self,
+        key: &'static str,
+        range: RangeInclusive<f64>,
+        mend: &str,
+    ) -> Option<f64> {
+        if !self.has(key) {
+            self.value(key);
+            self.missing(key, "a number", mend);
+            return None;
+        }
+        self.number_in(key, range, mend)
+    }
+
+    /// A whole number within a range, or its default.
+    pub fn whole_or(&mut self, key: &'static str, default: u64, range: RangeInclusive<u64>) -> u64 {
+        if !self.has(key) {
+            self.knows(key);
+            self.default(key, default);
+            return default;
+        }
+        self.whole_in(key, range, default).unwrap_or(default)
+    }
+
+    /// A whole number within a range, if one was typed.
+    pub fn whole_in(&mut self, key: &'static str, range: RangeInclusive<u64>, example: u64) -> Option<u64> {
+        let value = self.value(key)?;
+        let whole = match value {
+            DeValue::Integer(integer) => u64::from_str_radix(integer.as_str(), integer.radix()).ok(),
+            _ => None,
+        };
+        let whole = whole.filter(|whole| range.contains(whole));
+        if whole.is_none() {
+            let expected = format!("a whole number from {} to {}", range.start(), range.end());
+            let mend = format!("for example {example}");
+            self.fault(Fault::key(self.path_of(key), described(value), expected, mend));
+        }
+        whole
+    }
+
+    /// A list of numbers, if one was typed.
+    pub fn numbers(&mut self, key: &'static str) -> Option<Vec<f64>> {
+        let value = self.value(key)?;
+        let DeValue::Array(array) = value else {
+            self.wrong_type(key, value, "a list of numbers");
+            return None;
+        };
+        let mut numbers = Vec::with_capacity(array.len());
+        for (at, element) in array.iter().enumerate() {
+            match finite(element.get_ref()) {
+                Some(number) => numbers.push(number),
+                None => self.wrong_type(&format!("{key}[{at}]"), element.get_ref(), "a number"),
+            }
+        }
+        (numbers.len() == array.len()).then_some(numbers)
+    }
+
+    /// A number, a list of numbers or a list of lists of numbers, if one was typed.
+    pub fn nested_numbers(&mut self, key: &'static str) -> Option<Nested> {
+        const EXPECTED: &str = "a number, a list of numbers, or a list of lists of numbers";
+        let value = self.value(key)?;
+        let list = |value: &DeValue<'_>| match value {
+            DeValue::Array(array) => array.iter().map(|element| finite(element.get_ref())).collect(),
+            _ => None,
+        };
+        let nested = match value {
+            DeValue::Array(array) if array.iter().any(|element| element.get_ref().is_array()) => {
+                array.iter().map(|element| list(element.get_ref())).collect::<Option<_>>().map(Nested::Lists)
+            }
+            DeValue::Array(_) => list(value).map(Nested::List),
+            other => finite(other).map(Nested::One),
+        };
+        if nested.is_none() {
+            self.wrong_type(key, value, EXPECTED);
+        }
+        nested
+    }
+
+    /// Twelve numbers, January first, if they were typed; with `or_one`, one number for all months will do.
+    pub fn monthly(&mut self, key: &'static str, or_one: bool) -> Option<[f64; 12]> {
+        if or_one && self.value(key).is_some_and(|value| !matches!(value, DeValue::Array(_))) {
+            return self.number(key).map(|number| [number; 12]);
+        }
+        let numbers = self.numbers(key)?;
+        let found = numbers.len();
+        let twelve = <[f64; 12]>::try_from(numbers).ok();
+        if twelve.is_none() {
+            self.fault(Fault::key(
+                self.path_of(key),
+                format!("{found} numbers"),
+                "twelve numbers, January first",
+                "give one a month",
+            ));
+        }
+        twelve
+    }
+}
+
+fn finite(value: &DeValue<'_>) -> Option<f64> {
+    match value {
+        DeValue::Integer(integer) => {
+            i64::from_str_radix(integer.as_str(), integer.radix()).ok().map(|n| n as f64)
+        }
+        DeValue::Float(float) => float.as_str().parse().ok(),
+        _ => None,
+    }
+    .filter(|number: &f64| number.is_finite())
+}
