@@ -21,6 +21,9 @@ pub struct BasinTyped {
 /// Near-surface gradients outside this range are unusual (Minder, Mote & Lundquist 2010), degC per km.
 const USUAL_C_PER_KM: std::ops::RangeInclusive<f64> = -8.0..=-2.0;
 
+/// Precipitation gradients in general use, percent per 100 m; no single source.
+const USUAL_PCT_PER_100M: std::ops::RangeInclusive<f64> = 0.0..=10.0;
+
 pub(super) fn read(mut section: Section<'_>) -> Option<BasinTyped> {
     let latitude_deg =
         section.required_number("latitude_deg", -90.0..=90.0, "degrees, negative in the southern hemisphere");
@@ -40,6 +43,12 @@ pub(super) fn read(mut section: Section<'_>) -> Option<BasinTyped> {
         -20.0..=50.0,
         "add it, in percent of the station's precipitation; 0 to 10 is usual, and there is no default",
     );
+    if pct_per_100m.is_some_and(|pct| !USUAL_PCT_PER_100M.contains(&pct)) {
+        section.unlikely(
+            "precipitation_gradient_pct_per_100m",
+            "outside 0 to 10 percent per 100 m, the range in general use (no single source)",
+        );
+    }
     let top_m = section.number_in(
         "precipitation_gradient_top_m",
         -500.0..=9000.0,

@@ -152,5 +152,5 @@ pub fn draw(faults: &[Fault], drawing: &Drawing<'_>) -> String {
 
 /// Writes out what is unlikely, a line each.
 pub fn unlikely_lines(unlikely: &[Unlikely]) -> String {
-    unlikely.iter().map(|notice| format!("unlikely: {}: {}\n", notice.about, notice.why)).collect()
+    unlikely.iter().map(|notice| format!("second look: {}: {}\n", notice.about, notice.why)).collect()
 }

@@ -15,6 +15,9 @@ pub struct RealizationsTyped {
     pub mean_change_sd_pct: Option<f64>,
 }
 
+/// A larger assumed spread of mean precipitation drowns what the record has, percent.
+const LARGE_CHANGE_SD_PCT: f64 = 25.0;
+
 pub(super) fn read(mut section: Section<'_>) -> Option<RealizationsTyped> {
     if section.has("generator") {
         section.choice("generator", &[("year-blocks", ())]);
@@ -37,6 +40,9 @@ pub(super) fn read(mut section: Section<'_>) -> Option<RealizationsTyped> {
             "percent; an assumption about the future, leave it out for none",
         ),
     };
+    if typed.mean_change_sd_pct.is_some_and(|sd_pct| sd_pct > LARGE_CHANGE_SD_PCT) {
+        section.unlikely("mean_change_sd_pct", "above 25 percent: the spread is then mostly this assumption");
+    }
     section.finish();
     Some(typed)
 }

@@ -28,6 +28,16 @@ impl GaugeMultiplier {
         for (name, value) in [("rain", self.rain), ("snow", self.snow)] {
             let key = format!("weather.gauge_multiplier.{name}");
             within(&mut faults, &key, value, 0.1..=5.0, "", "1.1 says that 10 % more fell than was caught");
+            let (most, why) = match name {
+                "rain" => (1.2, "gauges lose a few percent of rain, seldom 20 (common practice)"),
+                _ => (
+                    2.0,
+                    "undercatch of snow is 20 to 70 % (Pierre et al. 2019): above 2 only bare gauges in wind",
+                ),
+            };
+            if value > most {
+                unlikely.push(Unlikely::new(key.clone(), format!("{value} is above {most}: {why}")));
+            }
             if value < 1.0 {
                 unlikely.push(Unlikely::new(
                     key,

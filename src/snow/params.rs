@@ -230,6 +230,26 @@ impl SnowParams {
                 ),
             ));
         }
+        let usual = [
+            ("snow.melt_base_c", self.melt_base_c, -1.0..=2.0, "-1 to 2 degC (common practice)"),
+            (
+                "snow.liquid_holding_fraction",
+                self.liquid_holding_fraction,
+                0.0..=0.10,
+                "up to 0.10: ripe snow holds 0.02 to 0.05 (Singh & Singh 2001, from memory), the defaults 0.10",
+            ),
+            (
+                "snow.refreeze_fraction",
+                self.refreeze_fraction,
+                0.0..=0.30,
+                "up to 0.30: 0.05 is common practice, the defaults reach 0.20 in place of cold content",
+            ),
+        ];
+        for (key, value, range, why) in usual {
+            if !range.contains(&value) {
+                found.push(Unlikely::new(key, format!("{value}; usual is {why}")));
+            }
+        }
         found
     }
 }

@@ -190,7 +190,7 @@ fn impossible_values_are_missing_and_said() {
     assert_eq!(ended.status, 0, "{}", ended.stderr);
     for (column, value) in [("tmin", "-999.0 degC"), ("tmax", "999.0 degC"), ("precipitation", "1e300 mm")] {
         let said =
-            ended.stderr.lines().find(|line| line.starts_with(&format!("unlikely: weather.{column}: 1 ")));
+            ended.stderr.lines().find(|line| line.starts_with(&format!("second look: weather.{column}: 1 ")));
         assert!(
             said.is_some_and(|line| line.contains("taken as missing") && line.ends_with(value)),
             "{}",

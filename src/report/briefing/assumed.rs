@@ -44,7 +44,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             p { @for (at, (key, value)) in study.defaults.iter().enumerate() { @if at > 0 { ", " } code { (key) " = " (value) } } }
         }
         @if !study.unlikely.is_empty() {
-            h3 { "Unlikely, but allowed" @if reader.units != UnitSystem::Metric { " (in the scenario's metric units)" } }
+            h3 { "Worth a second look" @if reader.units != UnitSystem::Metric { " (in the scenario's metric units)" } }
             ul { @for notice in study.unlikely { li { code { (notice.about) } ": " (notice.why) } } }
         }
     }

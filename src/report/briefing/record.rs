@@ -24,7 +24,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             }
             @if let Some(gauge) = counts.gauge {
                 " The accumulating gauge was set back " (gauge.resets) " times and fell a little " (gauge.small_falls)
-                " times (" (reader.amount(gauge.small_falls_mm)) " in all, taken for noise)."
+                " times (in all " (reader.amount(gauge.small_falls_mm)) ", taken for noise)."
             }
         }
         @if let Some(baseline) = record.baseline {

@@ -160,17 +160,17 @@ error: bands.csv: more than 1000 bands
     );
     insta::assert_snapshot!(said, @r"
 ## a hole
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
-unlikely: basin.bands: the bands leave a hole from 2100 to 2300 m
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: basin.bands: the bands leave a hole from 2100 to 2300 m
 
 ## one band
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 
 ## 500 bands
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 
 ## from the highest down
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 ");
 }
 

@@ -292,10 +292,10 @@ fn records_that_are_taken() {
 
 
 ## no 29 February
-unlikely: weather.date: 3 times 29 February, which has no line in any leap year; the first on 2004-02-29. Years of 365 days? Temperatures are interpolated there, and precipitation counts as missing
+second look: weather.date: 3 times 29 February, which has no line in any leap year; the first on 2004-02-29. Years of 365 days? Temperatures are interpolated there, and precipitation counts as missing
 
 ## one year
-unlikely: weather.file: one water year is in use, so every realization is that year over and over and chance has no spread
+second look: weather.file: one water year is in use, so every realization is that year over and over and chance has no spread
 
 ## 200 years
 

@@ -46,7 +46,7 @@ fn accepted(basin: &Basin) -> String {
     for left in ["days", "out"] {
         std::fs::remove_dir_all(basin.path().join(left)).unwrap();
     }
-    said[2].lines().filter(|line| line.starts_with("unlikely: ")).collect::<Vec<_>>().join("\n")
+    said[2].lines().filter(|line| line.starts_with("second look: ")).collect::<Vec<_>>().join("\n")
 }
 
 /// What is said about one file after another in the place of `name`, none of which is taken.

@@ -378,21 +378,21 @@ fn odd_tables_that_are_taken() {
     );
     insta::assert_snapshot!(said, @r"
 ## separators at every end
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 
 ## blank lines
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 
 ## blanks around cells
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 
 ## no line end at the end
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 
 ## old line ends
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 
 ## a column more
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 ");
 }

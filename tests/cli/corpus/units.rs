@@ -52,46 +52,46 @@ error: weather.csv: no water year that can be used; 2001: temperature or precipi
 fn units_that_leave_a_record() {
     let cool = temperatures(|value| (value - 8.0) * 1.8 + 32.0);
     insta::assert_snapshot!(accepted(&cool), @r"
-unlikely: weather.tmin.unit: the column's mean is 13.8 degC, 33.5 degC in its warmest month; read as degF it would be -10.1 degC
-unlikely: weather.tmax.unit: the column's mean is 32.0 degC, 51.7 degC in its warmest month; read as degF it would be 0.0 degC
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
-unlikely: weather.tmax: 299 values beyond -55 to 45 degC; the first on 2001-05-28 (line 241): 45.5 degC
+second look: weather.tmin.unit: the column's mean is 13.8 degC, 33.5 degC in its warmest month; read as degF it would be -10.1 degC
+second look: weather.tmax.unit: the column's mean is 32.0 degC, 51.7 degC in its warmest month; read as degF it would be 0.0 degC
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.tmax: 299 values beyond -55 to 45 degC; the first on 2001-05-28 (line 241): 45.5 degC
 ");
     let celsius = small();
     celsius.exchange("\"tmin_c\", unit = \"degC\"", "\"tmin_c\", unit = \"degF\"");
     celsius.exchange("\"tmax_c\", unit = \"degC\"", "\"tmax_c\", unit = \"degF\"");
     insta::assert_snapshot!(accepted(&celsius), @r"
-unlikely: weather.tmin.unit: the column's mean is -18.9 degC, -12.9 degC in its warmest month; read as degC it would be -2.1 degC
-unlikely: weather.tmax.unit: the column's mean is -13.3 degC, -7.3 degC in its warmest month; read as degC it would be 8.0 degC
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.tmin.unit: the column's mean is -18.9 degC, -12.9 degC in its warmest month; read as degC it would be -2.1 degC
+second look: weather.tmax.unit: the column's mean is -13.3 degC, -7.3 degC in its warmest month; read as degC it would be 8.0 degC
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 ");
     let inches = precipitation(|_, amount| format!("{:.2}", amount / 25.4));
     insta::assert_snapshot!(accepted(&inches), @r"
-unlikely: weather.precipitation.unit: 32 mm a year; read as cm it would be 323 mm, read as in it would be 819 mm
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.precipitation.unit: 32 mm a year; read as cm it would be 323 mm, read as in it would be 819 mm
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 ");
     let millimetres = small();
     millimetres.exchange("unit = \"mm\"", "unit = \"in\"");
     insta::assert_snapshot!(accepted(&millimetres), @r"
-unlikely: weather.precipitation.unit: 20868 mm a year; read as mm it would be 822 mm
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.precipitation.unit: 20868 mm a year; read as mm it would be 822 mm
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 ");
 }
 
 #[test]
 fn gauges_that_are_not_what_is_said() {
     insta::assert_snapshot!(accepted(&accumulating()), @r#"
-unlikely: weather.precipitation.gauge: the column rises on 273 days and falls on 0, as an accumulating gauge does; read so it would be 820 mm a year: gauge = "accumulating"?
-unlikely: weather.file: only 2 water years are in use: the spread of realizations hardly holds what chance can do
-unlikely: weather.precipitation: 155 amounts above 2000 mm in a day, which no station has measured, taken as missing; the first on 2003-04-29 (line 942): 2007.0 mm
-unlikely: weather.precipitation: 608 amounts above 500 mm in a day; the first on 2001-08-29 (line 334): 504.0 mm
+second look: weather.precipitation.gauge: the column rises on 273 days and falls on 0, as an accumulating gauge does; read so it would be 820 mm a year: gauge = "accumulating"?
+second look: weather.file: only 2 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.precipitation: 155 amounts above 2000 mm in a day, which no station has measured, taken as missing; the first on 2003-04-29 (line 942): 2007.0 mm
+second look: weather.precipitation: 608 amounts above 500 mm in a day; the first on 2001-08-29 (line 334): 504.0 mm
 "#);
     let daily = small();
     daily.exchange("unit = \"mm\"", "unit = \"mm\", gauge = \"accumulating\", reading = \"end-of-day\"");
     insta::assert_snapshot!(accepted(&daily), @r#"
-unlikely: weather.precipitation.gauge: the column falls on 274 days and rises on 273, as daily amounts do; read so it would be 822 mm a year: gauge = "daily"?
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
-unlikely: weather.precipitation: 7377 mm of small falls taken for noise: does the gauge accumulate, and in this unit?
+second look: weather.precipitation.gauge: the column falls on 274 days and rises on 273, as daily amounts do; read so it would be 822 mm a year: gauge = "daily"?
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.precipitation: 7377 mm of small falls taken for noise: does the gauge accumulate, and in this unit?
 "#);
 }
 
@@ -100,8 +100,8 @@ fn a_hemisphere_that_is_not_the_stations() {
     let basin = small();
     basin.exchange("latitude_deg = 40", "latitude_deg = -40");
     insta::assert_snapshot!(accepted(&basin), @r"
-unlikely: weather.file: only 2 water years are in use: the spread of realizations hardly holds what chance can do
-unlikely: basin.latitude_deg: January is the coldest month: is the sign of the latitude right?
+second look: weather.file: only 2 water years are in use: the spread of realizations hardly holds what chance can do
+second look: basin.latitude_deg: January is the coldest month: is the sign of the latitude right?
 ");
 }
 

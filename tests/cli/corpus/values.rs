@@ -118,16 +118,16 @@ fn values_that_are_hardly_weather() {
     );
     insta::assert_snapshot!(said, @r"
 ## 1e308 once
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
-unlikely: weather.precipitation: 1 amount above 2000 mm in a day, which no station has measured, taken as missing; the first on 2000-10-01 (line 2): 1e308 mm
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.precipitation: 1 amount above 2000 mm in a day, which no station has measured, taken as missing; the first on 2000-10-01 (line 2): 1e308 mm
 
 ## temperature that never changes
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
-unlikely: weather.tmin: 1095 values, all of them the same; the first on 2000-10-01 (line 2): -3.0 degC. Is it the right column?
-unlikely: weather.tmax: 1095 values, all of them the same; the first on 2000-10-01 (line 2): 3.0 degC. Is it the right column?
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.tmin: 1095 values, all of them the same; the first on 2000-10-01 (line 2): -3.0 degC. Is it the right column?
+second look: weather.tmax: 1095 values, all of them the same; the first on 2000-10-01 (line 2): 3.0 degC. Is it the right column?
 
 ## no precipitation at all
-unlikely: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
-unlikely: weather.precipitation: 1095 days with an amount, all of them 0; the first on 2000-10-01 (line 2): 0.0 mm. Is it the right column?
+second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: weather.precipitation: 1095 days with an amount, all of them 0; the first on 2000-10-01 (line 2): 0.0 mm. Is it the right column?
 ");
 }
