@@ -7,13 +7,13 @@ use thawline::snow::{GaugeMultiplier, PhaseRule, correct_catch};
 use thawline::table::{DateColumn, Format};
 use thawline::units::{DepthUnit, TemperatureUnit};
 use thawline::weather::{
-    Columns, Gauge, Limits, PrecipitationColumn, Record, TemperatureColumn, TemperatureColumns, Why,
+    Columns, Gauge, Limits, PrecipitationColumn, Reading, Record, TemperatureColumn, TemperatureColumns, Why,
 };
 
-fn read(text: &str) -> Record {
+fn columns() -> Columns {
     let temperature =
         |column: &str| TemperatureColumn { column: column.to_owned(), unit: TemperatureUnit::Celsius };
-    let columns = Columns {
+    Columns {
         date: DateColumn { columns: vec!["date".to_owned()], format: "%Y-%m-%d".to_owned() },
         temperature: TemperatureColumns::Extremes {
             tmin: temperature("tmin_c"),
@@ -26,10 +26,17 @@ fn read(text: &str) -> Record {
             trace: Vec::new(),
         },
         format: Format::default(),
-    };
+    }
+}
+
+fn read_with(text: &str, columns: &Columns) -> Record {
     let day = |month, day| MonthDay::new(month, day).unwrap();
     let start = WaterYearStart(day(10, 1));
-    thawline::weather::read("weather.csv", text, &columns, start, day(4, 1), Limits::default()).unwrap()
+    thawline::weather::read("weather.csv", text, columns, start, day(4, 1), &Limits::default()).unwrap()
+}
+
+fn read(text: &str) -> Record {
+    read_with(text, &columns())
 }
 
 /// From which date, for how many days, and what becomes of each line.
@@ -138,4 +145,38 @@ fn gauge_catch() {
     for (found, expected) in record.series.precipitation_mm.iter().zip([11.0, 12.0, 10.0]) {
         assert!((found - expected).abs() < 1e-12, "{found} for {expected}");
     }
+}
+
+/// An accumulating gauge whose readings hold a mark that nobody declared, one absurd reading, and a month in which it was
+/// emptied early. Worked by hand: 1 mm a day on a start-of-day gauge that is set back on 1 October.
+#[test]
+fn what_is_no_reading_of_a_gauge_makes_no_precipitation() {
+    let gauge = |odd: fn(&str, f64) -> f64| {
+        let first = chrono::NaiveDate::from_ymd_opt(2000, 10, 1).unwrap();
+        let mut text = String::from("date,tmin_c,tmax_c,precip_mm\n");
+        for date in first.iter_days().take(3 * 365 + 1) {
+            let began = WaterYearStart(MonthDay::new(10, 1).unwrap());
+            let day = (date - began.first_day(began.water_year_of(date))).num_days();
+            let low = -((day % 7) as f64);
+            text += &format!("{date},{low},{},{}\n", low + 9.0, odd(&date.to_string(), day as f64));
+        }
+        let mut columns = columns();
+        columns.precipitation.gauge =
+            Gauge::Accumulating { reading: Reading::StartOfDay, reset_tolerance_mm: 50.0 };
+        read_with(&text, &columns)
+    };
+    // The day of a reset is missing, so each year but the last has 364 days of 1 mm; the last reading belongs to no day.
+    let sum = |record: &Record| record.series.precipitation_mm.iter().sum::<f64>();
+    let sound = gauge(|_, reading| reading);
+    assert_eq!((sound.series.years.len(), sum(&sound)), (3, 364.0 * 3.0));
+    let negative = gauge(|date, reading| if date == "2001-03-01" { -999.0 } else { reading });
+    assert_eq!((sum(&negative), negative.counts.impossible_cells), (364.0 * 3.0 - 2.0, 1));
+    let absurd = gauge(|date, reading| if date == "2001-03-01" { 29_000.0 } else { reading });
+    assert!(sum(&absurd) < 364.0 * 3.0, "{}", sum(&absurd));
+    let says = |record: &Record, what: &str| record.suspicions.iter().any(|it| it.what.contains(what));
+    assert!(says(&absurd, "amounts above 2000 mm"));
+    let dropped = gauge(|date, reading| if date == "2001-03-01" { 0.0 } else { reading });
+    assert!(says(&dropped, "made up within 3 days") && !says(&sound, "made up within 3 days"));
+    let emptied = gauge(|_, reading| reading % 30.0);
+    assert!(says(&emptied, "to nearly nothing") && !says(&sound, "to nearly nothing"));
 }

@@ -107,6 +107,16 @@ impl Baseline {
         for (season, tests) in seasons {
             let Some(tests) = tests else { continue };
             let per_decade_c = 10.0 * tests.theil_sen.slope_per_year;
+            if detrend_to.is_some() && !tests.mann_kendall.is_significant() {
+                found.push(Unlikely::new(
+                    "weather.detrend_to",
+                    format!(
+                        "takes {per_decade_c:+.2} degC per decade out of the {season} season, which is no significant trend \
+                         (Mann-Kendall p = {:.2})",
+                        tests.mann_kendall.p()
+                    ),
+                ));
+            }
             let is_large = per_decade_c.abs() >= LEAST_TREND_C_PER_DECADE;
             if detrend_to.is_none() && is_large && tests.mann_kendall.is_significant() {
                 found.push(Unlikely::new(

@@ -46,6 +46,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
     let mut draft = crate::scenario::read(&document);
     if let Some(seed) = shared.seed {
         draft.seed = seed;
+        draft.defaults.retain(|default| default.key != "seed");
     }
     let mut faults = std::mem::take(&mut draft.faults);
     let bands = take(read_bands_of(&draft, &folder), &mut faults).flatten();
@@ -91,6 +92,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             let mut observations = Vec::with_capacity(observed.len());
             for (site, (observed, file)) in scenario.observed.iter().zip(observed) {
                 unlikely.extend(observed.unlikely(&site.key, site.elevation_m, &basin, station_m));
+                unlikely.extend(observed.unit_slip(&site.key, site.columns.swe.unit, &weather));
                 unlikely.extend(observed.unused(&site.key, &weather));
                 observations.push(observed);
                 files.push(file);
@@ -142,7 +144,7 @@ fn read_record_of(draft: &Draft, folder: &Path) -> Result<Option<(Record, InputF
         &typed.columns,
         start,
         season.survey_dates[0],
-        typed.limits,
+        &typed.limits,
     )?;
     Ok(Some((record, file)))
 }

@@ -126,7 +126,8 @@ fn read_station(place: &Place) -> Record {
     };
     let day = |(month, day)| MonthDay::new(month, day).unwrap();
     let text = station::table(place);
-    read("weather.csv", &text, &columns, WaterYearStart(day(starts)), day(survey), Limits::default()).unwrap()
+    read("weather.csv", &text, &columns, WaterYearStart(day(starts)), day(survey), &Limits::default())
+        .unwrap()
 }
 
 fn metric_columns() -> Columns {

@@ -45,8 +45,8 @@ pub struct ComparedYear {
     /// Days with a reading.
     pub readings: usize,
     /// Of a pillow: whether at most 15 readings are missing from the 62nd day (1 December where the year starts on
-    /// 1 October) to the observed melt-out, or to the year's end where there is none. Else the year has no peak and no
-    /// melt-out.
+    /// 1 October) to the later of the observed and the modelled melt-out, or to the year's end where one of them has none:
+    /// a pillow that fails after an early thaw has not seen the winter. Else the year has no peak and no melt-out.
     pub is_whole: bool,
     /// Observed peak, mm.
     pub observed_peak_mm: Option<f64>,
@@ -82,8 +82,9 @@ impl ComparedYear {
         let observed: Vec<Option<f64>> = days.iter().map(|day| day.observed_mm).collect();
         let modelled: Vec<Option<f64>> = days.iter().map(|day| Some(day.modelled_mm)).collect();
         let found = Season::of(&observed);
-        let is_whole = kind == Kind::Pillow && is_whole(&observed, found.melt_out);
-        let [found, made] = if is_whole { [found, Season::of(&modelled)] } else { [Season::NONE; 2] };
+        let made = Season::of(&modelled);
+        let is_whole = kind == Kind::Pillow && is_whole(&observed, [found.melt_out, made.melt_out]);
+        let [found, made] = if is_whole { [found, made] } else { [Season::NONE; 2] };
         let pairs: Vec<Pair> = days.iter().filter_map(DayPair::pair).collect();
         let survey = |date: &MonthDay| survey(&days, first, day_of_water_year(first, *date), kind);
         Self {
@@ -159,8 +160,9 @@ impl Season {
 }
 
 /// The rule of [`ComparedYear::is_whole`].
-fn is_whole(observed: &[Option<f64>], melt_out: Outcome) -> bool {
-    let end = melt_out.value().map_or(observed.len(), |day| day as usize);
+fn is_whole(observed: &[Option<f64>], melt_outs: [Outcome; 2]) -> bool {
+    let last_day = |melt_out: Outcome| melt_out.value().map_or(observed.len(), |day| day as usize);
+    let end = last_day(melt_outs[0]).max(last_day(melt_outs[1]));
     let asked = observed[..end].iter().skip(WHOLE_FROM_DAY - 1);
     let has_any = observed.iter().any(Option::is_some);
     has_any && asked.filter(|swe_mm| swe_mm.is_none()).count() <= MISSING_DAYS_ALLOWED

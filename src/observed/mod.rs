@@ -4,6 +4,7 @@
 //! S(d), the snow water equivalent as day d begins, which is what the model's states are held against.
 
 mod columns;
+mod declared;
 mod observations;
 mod read;
 

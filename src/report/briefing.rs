@@ -47,6 +47,10 @@ pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg], of_sit
                             "read how far it is from " a href=(format!("#{}", observed::ADDRESS)) { "what was observed" } " before you rely on any number here."
                         }
                     }
+                    @if !study.unlikely.is_empty() {
+                        p.notice { (counted(study.unlikely.len(), "thing")) " about the input " (if study.unlikely.len() == 1 { "is" } else { "are" })
+                            " " a href=(format!("#{}", assumed::SECOND_LOOK)) { "worth a second look" } "." }
+                    }
                     (answer::section(study, answer))
                     @for figure in figures {
                         (self::figure(figure))

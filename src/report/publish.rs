@@ -12,7 +12,7 @@ use thiserror::Error;
 pub enum PublishError {
     /// The target holds something that is not ours.
     #[error(
-        "{target} holds '{stranger}', which is no result of thawline; nothing was replaced. Choose another folder with \
+        "{target} holds '{stranger}', which this command did not write; nothing was replaced. Choose another folder with \
          --into, or replace it all with --force"
     )]
     NotOurs {

@@ -4,6 +4,8 @@ use super::section::Section;
 use crate::fault::Fault;
 use crate::perturb::GlobalWarming;
 
+/// A level beyond this is no warming that can be meant, degC.
+const POSSIBLE_C: std::ops::RangeInclusive<f64> = -10.0..=15.0;
 /// A study of more levels than this is a mistyped list.
 const MOST_LEVELS: usize = 40;
 /// Land has warmed 1.46 times the globe from 1850-1900 to 2011-2020 (IPCC AR6: 1.59 over 1.09 degC).
@@ -73,10 +75,25 @@ fn read_global(mut section: Section<'_>) -> Option<Levels> {
             "outside 0 to 1.6 degC; 2011-2020 was 1.09 above 1850-1900 (IPCC AR6)",
         );
     }
+    let global = local_per_global.zip(already).map(|(local_per_global, already_in_record_c)| GlobalWarming {
+        local_per_global,
+        already_in_record_c,
+    });
+    let local = levels.zip(global).and_then(|(levels, global)| {
+        let typed_c: Vec<f64> = levels.into_iter().map(|level_c| global.local_c(level_c)).collect();
+        let Some(beyond_c) = typed_c.iter().find(|level_c| !POSSIBLE_C.contains(level_c)) else {
+            return Some(Levels { typed_c, global: Some(global) });
+        };
+        section.fault(Fault::key(
+            section.path_of("levels_c"),
+            format!("a level that is {beyond_c:.1} degC of the basin's own"),
+            "a warming of the basin from -10 to 15 degC",
+            "check local_per_global and already_in_record_global_c",
+        ));
+        None
+    });
     section.finish();
-    let global = GlobalWarming { local_per_global: local_per_global?, already_in_record_c: already? };
-    let typed_c = levels?.into_iter().map(|level_c| global.local_c(level_c)).collect();
-    Some(Levels { typed_c, global: Some(global) })
+    local
 }
 
 /// Every level within its range and once.
@@ -87,7 +104,7 @@ fn check(section: &Section<'_>, levels: Vec<f64>) -> Option<Vec<f64>> {
         sound = false;
     };
     for (at, level) in levels.iter().enumerate() {
-        if !(-10.0..=15.0).contains(level) {
+        if !POSSIBLE_C.contains(level) {
             complain(
                 at,
                 level.to_string(),

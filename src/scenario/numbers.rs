@@ -130,6 +130,24 @@ impl Section<'_> {
         nested
     }
 
+    /// A list of years, if one was typed.
+    pub fn years(&mut self, key: &'static str) -> Option<Vec<i32>> {
+        const POSSIBLE: RangeInclusive<f64> = 1500.0..=2500.0;
+        let numbers = self.numbers(key)?;
+        let is_year = |number: &f64| POSSIBLE.contains(number) && number.fract() == 0.0;
+        if let Some(other) = numbers.iter().find(|number| !is_year(number)) {
+            let mend = format!("for example {key} = [1986, 1998]");
+            self.fault(Fault::key(
+                self.path_of(key),
+                other,
+                "water years, each named for the year in which it ends",
+                mend,
+            ));
+            return None;
+        }
+        Some(numbers.into_iter().map(|number| number as i32).collect())
+    }
+
     /// Twelve numbers, January first, if they were typed; with `or_one`, one number for all months will do.
     pub fn monthly(&mut self, key: &'static str, or_one: bool) -> Option<[f64; 12]> {
         if or_one && self.value(key).is_some_and(|value| !matches!(value, DeValue::Array(_))) {

@@ -21,13 +21,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
     let levels = read_levels(&mut section);
     let reference_c =
         section.number_or("reference_c", 0.0, -10.0..=15.0, "the level all others are compared with");
-    let both = shape(&mut section, "monthly_shape");
-    let tmin = shape(&mut section, "tmin_monthly_shape");
-    let tmax = shape(&mut section, "tmax_monthly_shape");
-    if both.is_none() && tmin.is_none() && tmax.is_none() && !section.has("monthly_shape") {
-        section.default("monthly_shape", "[1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 1]");
-    }
-    let both = both.unwrap_or([1.0; 12]);
+    let [tmin_monthly_shape, tmax_monthly_shape] = read_shapes(&mut section);
     let typed_c = levels.as_ref().map(|levels| levels.typed_c.as_slice());
     let precipitation = read_precipitation_change(&mut section, typed_c, reference_c);
     section.finish();
@@ -37,13 +31,38 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
     }
     levels_c.sort_by(f64::total_cmp);
     let reference = levels_c.iter().position(|level| *level == reference_c)?;
-    let warming = Warming {
-        tmin_monthly_shape: tmin.unwrap_or(both),
-        tmax_monthly_shape: tmax.unwrap_or(both),
-        precipitation: precipitation?,
-        global,
-    };
+    let warming = Warming { tmin_monthly_shape, tmax_monthly_shape, precipitation: precipitation?, global };
     Some(WarmingTyped { levels_c, reference, warming })
+}
+
+/// Shapes of minima and maxima: one for both, or of their own.
+fn read_shapes(section: &mut Section<'_>) -> [[f64; 12]; 2] {
+    const EVEN: [f64; 12] = [1.0; 12];
+    let both = shape(section, "monthly_shape");
+    let own = ["tmin_monthly_shape", "tmax_monthly_shape"].map(|key| shape(section, key));
+    if both.is_some() && own.iter().all(Option::is_some) {
+        section.fault(Fault::key(
+            section.path_of("monthly_shape"),
+            "monthly_shape beside those of minima and maxima",
+            "one for both, or one for each",
+            "take monthly_shape out: the other two stand for all",
+        ));
+    }
+    if both.is_none() && !section.has("monthly_shape") {
+        match own {
+            [None, None] => section.default("monthly_shape", format!("{EVEN:?}")),
+            [None, Some(_)] => section.default("tmin_monthly_shape", format!("{EVEN:?}")),
+            [Some(_), None] => section.default("tmax_monthly_shape", format!("{EVEN:?}")),
+            [Some(_), Some(_)] => {}
+        }
+    }
+    let shapes = own.map(|own| own.or(both).unwrap_or(EVEN));
+    let mean = shapes.iter().map(Warming::yearly_mean).sum::<f64>() / 2.0;
+    if (mean - 1.0).abs() > 0.005 {
+        let why = format!("averages {mean:.3} over the year's days, so a level of +1 warms the year by that");
+        section.unlikely("monthly_shape", why);
+    }
+    shapes
 }
 
 fn shape(section: &mut Section<'_>, key: &'static str) -> Option<[f64; 12]> {
@@ -56,13 +75,6 @@ fn shape(section: &mut Section<'_>, key: &'static str) -> Option<[f64; 12]> {
             "each is degrees of warming in that month for one degree of the level",
         ));
         return None;
-    }
-    let mean = Warming::yearly_mean(&shape);
-    if (mean - 1.0).abs() > 0.005 {
-        section.unlikely(
-            key,
-            format!("averages {mean:.3} over the year's days, so a level of +1 warms the year by that"),
-        );
     }
     Some(shape)
 }

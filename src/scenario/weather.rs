@@ -68,6 +68,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
         stuck_temperature_days: section
             .whole_in("stuck_temperature_days", 3..=366, 10)
             .map(|days| days as usize),
+        leave_out_water_years: section.years("leave_out_water_years").unwrap_or_default(),
         temperature_departure_c: section.number_in(
             "temperature_departure_c",
             5.0..=200.0,

@@ -77,8 +77,8 @@ impl Format {
     pub fn is_missing(&self, cell: &str) -> bool {
         cell.is_empty()
             || self.missing.iter().any(|mark| {
-                let number = |text: &str| text.parse::<f64>().ok();
-                mark == cell || number(mark).is_some_and(|mark| number(cell) == Some(mark))
+                let stands_for = || self.number(mark).or_else(|| mark.parse().ok());
+                mark == cell || self.number(cell).is_some_and(|number| stands_for() == Some(number))
             })
     }
 
@@ -113,6 +113,7 @@ mod tests {
             (Some(-2.5), None, None)
         );
         assert!(point.is_missing("-9999.0") && point.is_missing("-99.90") && point.is_missing("NA"));
+        assert!(comma.is_missing("-99,9") && comma.is_missing("-99,90") && comma.is_missing("-9999"));
         assert!(!point.is_missing("-999") && !point.is_missing("0"));
     }
 }

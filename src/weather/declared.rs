@@ -124,7 +124,9 @@ impl Declared {
             );
             return Some(Unlikely::new("weather.precipitation.gauge", why));
         }
-        if self.gauge != Gauge::Daily && !looks_accumulating && self.rises >= FEWEST_RISES {
+        let is_likely_daily = USUAL_PRECIPITATION_MM.contains(&other_mm);
+        if self.gauge != Gauge::Daily && !looks_accumulating && is_likely_daily && self.rises >= FEWEST_RISES
+        {
             let why = format!(
                 "the column falls on {} days and rises on {}, as daily amounts do; read so it would be {other_mm:.0} mm a \
                  year: gauge = \"daily\"?",

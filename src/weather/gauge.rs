@@ -12,7 +12,7 @@ use serde::Serialize;
 pub struct GaugeCount {
     /// Falls larger than the tolerance.
     pub resets: usize,
-    /// Falls within the tolerance, taken for noise.
+    /// Falls from one reading to the next within the tolerance, taken for noise.
     pub small_falls: usize,
     /// Their sum, mm.
     pub small_falls_mm: f64,
@@ -35,7 +35,9 @@ pub(super) fn daily_amounts(
     let mut amounts = vec![None; readings.len()];
     let mut count = GaugeCount::default();
     let mut last: Option<(usize, f64)> = None;
+    let mut reading_before = f64::NEG_INFINITY;
     for (day, now) in readings.iter().enumerate().filter_map(|(day, now)| now.map(|now| (day, now))) {
+        let before = std::mem::replace(&mut reading_before, now);
         let Some((last_day, highest)) = last else {
             last = Some((day, now));
             continue;
@@ -53,9 +55,9 @@ pub(super) fn daily_amounts(
             last = Some((day, now));
             continue;
         }
-        if now < highest {
+        if now < before {
             count.small_falls += 1;
-            count.small_falls_mm += highest - now;
+            count.small_falls_mm += before - now;
         }
         let risen_to = now.max(highest);
         if follows {

@@ -75,12 +75,12 @@ pub fn read(
     columns: &Columns,
     start: WaterYearStart,
     survey: MonthDay,
-    limits: Limits,
+    limits: &Limits,
 ) -> Result<Record, Vec<Fault>> {
     let mut days = read_days(file, text, columns)?;
     let declared = Declared::of(&days, columns);
-    let sifted = sift(&mut days, columns, &limits);
-    let (amounts, gauge) = match columns.precipitation.gauge {
+    let sifted = sift(&mut days, columns, limits);
+    let (mut amounts, gauge) = match columns.precipitation.gauge {
         Gauge::Daily => (days.gauge_mm.clone(), None),
         Gauge::Accumulating { reading, reset_tolerance_mm } => {
             let is_first_day = |day: usize| {
@@ -92,7 +92,8 @@ pub fn read(
         }
     };
     let mut suspicions = sifted.suspicions;
-    suspicions.extend(sift_amounts(&days, &amounts));
+    let (impossible_amounts, of_amounts) = sift_amounts(&days, &mut amounts, columns);
+    suspicions.extend(of_amounts);
     let no_temperature: Vec<bool> =
         days.tmin_c.iter().zip(&days.tmax_c).map(|(tmin, tmax)| tmin.is_none() || tmax.is_none()).collect();
     let is_missing: Vec<bool> =
@@ -120,7 +121,7 @@ pub fn read(
         last: date_of(days.first, mean_c.len()),
         days: mean_c.len(),
         absent_days: days.line.iter().filter(|line| **line == 0).count(),
-        impossible_cells: sifted.impossible_cells,
+        impossible_cells: sifted.impossible_cells + impossible_amounts,
         far_temperature_cells: sifted.far_cells,
         stuck_temperature_cells: sifted.stuck_cells,
         temperature_missing_days: no_temperature.iter().filter(|missing| **missing).count(),

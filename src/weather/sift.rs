@@ -15,6 +15,12 @@ const POSSIBLE_C: RangeInclusive<f64> = -90.0..=60.0;
 const MOST_IN_A_DAY_MM: f64 = 2000.0;
 /// Nor more in a year (record: 26 470 mm in twelve months), mm.
 const MOST_IN_A_GAUGE_MM: f64 = 30_000.0;
+/// An empty gauge may sway so far below 0, mm.
+const LEAST_SWAY_MM: f64 = 10.0;
+/// Readings that fall away and are back within so many days were not set back.
+const DROP_OUT_DAYS: usize = 3;
+/// A gauge that falls to less than this from more than five times as much was emptied, mm.
+const NEARLY_EMPTY_MM: f64 = 2.0;
 /// Hardly a mountain station has been colder or hotter, degC.
 const USUAL_C: RangeInclusive<f64> = -55.0..=45.0;
 /// Hardly a mountain station has caught more in a day, mm.
@@ -40,7 +46,8 @@ pub(super) struct Sifted {
 }
 
 /// Takes as missing: values beyond any station's record; both temperatures of a day whose minimum lies above its maximum;
-/// where the limits ask for it, temperatures far from the median of their time of year. The rest stays and is said.
+/// where the limits ask for it, temperatures far from the median of their time of year and those that stay the same for too
+/// long. The rest stays and is said.
 pub(super) fn sift(days: &mut RawDays, columns: &Columns, limits: &Limits) -> Sifted {
     let mut finder = Finder { first_day: days.first, line: days.line.clone(), found: Vec::new() };
     let keys: &[&str] = match columns.temperature.named().len() {
@@ -60,6 +67,11 @@ pub(super) fn sift(days: &mut RawDays, columns: &Columns, limits: &Limits) -> Si
     };
     impossible_cells +=
         finder.drop("weather.precipitation", what, &mut days.gauge_mm, "mm", |_, value| value > most_mm);
+    if let Gauge::Accumulating { .. } = columns.precipitation.gauge {
+        let what = "readings below 0, which no gauge has";
+        let lowest = |_, value: f64| value < -LEAST_SWAY_MM;
+        impossible_cells += finder.drop("weather.precipitation", what, &mut days.gauge_mm, "mm", lowest);
+    }
     let crossed_days = if keys.len() == 2 { uncross(&mut finder, days) } else { 0 };
     let (mut far_cells, mut stuck_cells) = (0, 0);
     for (key, column) in keys.iter().zip([&mut days.tmin_c, &mut days.tmax_c]) {
@@ -79,10 +91,20 @@ pub(super) fn sift(days: &mut RawDays, columns: &Columns, limits: &Limits) -> Si
     Sifted { impossible_cells, crossed_days, far_cells, stuck_cells, suspicions: finder.found }
 }
 
-/// Daily amounts that are hardly precipitation. `line` holds the line of each day, 0 where it has none.
-pub(super) fn sift_amounts(days: &RawDays, amounts: &[Option<f64>]) -> Vec<Suspicion> {
+/// Daily amounts that cannot be are taken as missing, those that hardly can are said; so is a gauge whose resets are not what
+/// they seem. Gives the number of amounts taken as missing, too.
+pub(super) fn sift_amounts(
+    days: &RawDays,
+    amounts: &mut [Option<f64>],
+    columns: &Columns,
+) -> (usize, Vec<Suspicion>) {
     const KEY: &str = "weather.precipitation";
     let mut finder = Finder { first_day: days.first, line: days.line.clone(), found: Vec::new() };
+    let what = "amounts above 2000 mm in a day, which no station has measured";
+    let impossible = finder.drop(KEY, what, amounts, "mm", |_, value| value > MOST_IN_A_DAY_MM);
+    if let Gauge::Accumulating { reset_tolerance_mm, .. } = columns.precipitation.gauge {
+        resets(&mut finder, &days.gauge_mm, reset_tolerance_mm);
+    }
     finder.note(KEY, format!("amounts above {MUCH_IN_A_DAY_MM} mm in a day"), "", |day| {
         amounts[day].filter(|amount| *amount > MUCH_IN_A_DAY_MM).map(|amount| said(amount, "mm"))
     });
@@ -92,7 +114,35 @@ pub(super) fn sift_amounts(days: &RawDays, amounts: &[Option<f64>]) -> Vec<Suspi
             amounts[day].map(|amount| said(amount, "mm"))
         });
     }
-    finder.found
+    (impossible, finder.found)
+}
+
+/// Falls of an accumulating gauge that were taken for a reset and hardly are one, and those that hardly are noise.
+fn resets(finder: &mut Finder, gauge_mm: &[Option<f64>], reset_tolerance_mm: f64) {
+    let fall = |day: usize| {
+        let before = gauge_mm[..day].last().copied().flatten()?;
+        let now = gauge_mm[day]?;
+        (now < before).then_some((before, now))
+    };
+    let said_fall = |(before, now): (f64, f64)| format!("from {} to {}", said(before, "mm"), said(now, "mm"));
+    let mend = "Drop-outs? Then their days hold water that never fell: mark those readings as missing";
+    finder.note(
+        "weather.precipitation",
+        "falls of the gauge that are made up within 3 days, taken for resets",
+        mend,
+        |day| {
+            let (before, now) = fall(day).filter(|(before, now)| before - now > reset_tolerance_mm)?;
+            let next = gauge_mm[day + 1..].iter().take(DROP_OUT_DAYS).flatten();
+            (next.into_iter().any(|later| *later >= before)).then(|| said_fall((before, now)))
+        },
+    );
+    let mend = format!(
+        "Was it emptied? They are less than reset_tolerance_mm = {reset_tolerance_mm}, so taken for noise; state a smaller one"
+    );
+    finder.note("weather.precipitation", "falls of the gauge to nearly nothing", mend, |day| {
+        let (before, now) = fall(day).filter(|(before, now)| before - now <= reset_tolerance_mm)?;
+        (now < NEARLY_EMPTY_MM && before > 5.0 * NEARLY_EMPTY_MM).then(|| said_fall((before, now)))
+    });
 }
 
 /// A minimum above the maximum cannot be: takes both as missing and counts the days.

@@ -10,7 +10,7 @@ use serde::Serialize;
 const LONGEST_YEAR_DAYS: usize = 366;
 
 /// Limits of the screening; all of them are settings.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+#[derive(Debug, Clone, PartialEq, Serialize)]
 pub struct Limits {
     /// A longer run of days without temperatures is not interpolated.
     pub temperature_gap_days: usize,
@@ -22,6 +22,8 @@ pub struct Limits {
     pub temperature_departure_c: Option<f64>,
     /// A temperature that stays the same for this many days or more is taken as missing there; none keeps them all.
     pub stuck_temperature_days: Option<usize>,
+    /// Water years that the user leaves out.
+    pub leave_out_water_years: Vec<i32>,
 }
 
 impl Default for Limits {
@@ -32,6 +34,7 @@ impl Default for Limits {
             season_mean_departure_c: 6.0,
             temperature_departure_c: None,
             stuck_temperature_days: None,
+            leave_out_water_years: Vec::new(),
         }
     }
 }
@@ -40,6 +43,8 @@ impl Default for Limits {
 #[derive(Debug, Clone, PartialEq, Serialize)]
 #[serde(rename_all = "snake_case")]
 pub enum Why {
+    /// The user says so.
+    AsStated,
     /// Too many days miss temperature or precipitation.
     MissingDays {
         /// How many.
@@ -72,6 +77,7 @@ impl Why {
     /// The reason in a sentence, temperatures in the reader's unit.
     pub fn words(&self, units: UnitSystem) -> String {
         match self {
+            Self::AsStated => "as the scenario asks".to_owned(),
             Self::MissingDays { days } => {
                 format!("temperature or precipitation missing on {}", days_in_words(*days))
             }
@@ -146,7 +152,7 @@ pub(super) struct Screening<'a> {
     pub start: WaterYearStart,
     /// Ends the cool season, which began with the water year.
     pub survey: MonthDay,
-    pub limits: Limits,
+    pub limits: &'a Limits,
 }
 
 impl Screening<'_> {
@@ -183,6 +189,9 @@ impl Screening<'_> {
         let to = days_between(self.first, end_day).min(self.is_missing.len());
         let inside = self.is_missing[from..to].iter().filter(|missing| **missing).count();
         let mut why = Vec::new();
+        if self.limits.leave_out_water_years.contains(&water_year) {
+            why.push(Why::AsStated);
+        }
         if outside > 0 {
             why.push(Why::BeyondRecord { days: outside });
         }

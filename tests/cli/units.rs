@@ -198,10 +198,11 @@ fn notices_keep_the_units_of_the_scenario() {
     basin.exchange("temperature_gradient_c_per_km = -6.0", "temperature_gradient_c_per_km = -9.0");
     both(&basin);
     let page = basin.read("us/briefing.html");
-    let (_, notices) =
-        page.split_once("<h3>Worth a second look (in the scenario's metric units)</h3>").unwrap();
+    let (_, notices) = page
+        .split_once("<h3 id=\"second-look\">Worth a second look (in the scenario's metric units)</h3>")
+        .unwrap();
     assert!(notices.contains("outside -8 to -2 degC per km"), "{notices}");
-    assert!(basin.read("metric/briefing.html").contains("<h3>Worth a second look</h3>"));
+    assert!(basin.read("metric/briefing.html").contains("<h3 id=\"second-look\">Worth a second look</h3>"));
 }
 
 /// A level that is no short decimal reads well, and stands in full in the tables.

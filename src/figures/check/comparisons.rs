@@ -120,7 +120,7 @@ fn titles_turn_with_the_bias() {
     let title = |made: Made| made.draw().title;
     assert_eq!(
         title(PLAIN),
-        "At Heron Meadow, modelled peak SWE is 10 % below the observed and melt-out comes 11 days earlier; NSE 0.88"
+        "At Heron Meadow, modelled peak SWE is 10 % below the observed and melt-out comes 11 days earlier in the mean; NSE 0.88"
     );
     let high = Made { bias_pct: Some(4.2), kind: Kind::Course, ..PLAIN };
     assert_eq!(title(high), "At Heron Meadow, modelled 1 April SWE is 4.2 % above the observed; NSE 0.88");

@@ -61,7 +61,7 @@ impl Words {
     }
 }
 
-/// `At Heron Meadow, modelled peak SWE is 10 % below the observed and melt-out comes 11 days earlier; NSE 0.88`.
+/// `At Heron Meadow, modelled peak SWE is 10 % below the observed and melt-out comes 11 days earlier in the mean; NSE 0.88`.
 fn finding(comparison: &Comparison, units: UnitSystem) -> String {
     let nse = comparison.nash_sutcliffe.map_or(String::new(), |nse| format!("; NSE {}", score(nse)));
     let survey = comparison.surveys.first().and_then(|survey| Some((survey.survey, survey.bias?)));
@@ -73,9 +73,9 @@ fn finding(comparison: &Comparison, units: UnitSystem) -> String {
             return format!("{}: {readings} of SWE beside the model{nse}", comparison.site);
         }
     };
-    let melt_out = comparison
-        .melt_out
-        .map_or(String::new(), |error| format!(" and melt-out comes {}", days_in_words(error.mean_days)));
+    let melt_out = comparison.melt_out.map_or(String::new(), |error| {
+        format!(" and melt-out comes {} in the mean", days_in_words(error.mean_days))
+    });
     format!("At {}, {what}{melt_out}{nse}", comparison.site)
 }
 

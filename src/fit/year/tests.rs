@@ -58,6 +58,11 @@ fn years_with_holes() {
     assert!(is_whole(100, 15) && !is_whole(100, 16));
     assert!(is_whole(1, 61 + 15) && !is_whole(1, 61 + 16));
     assert!(is_whole(207, 159));
+    let mut early: Vec<Option<f64>> = vec![None; 365];
+    early[..80].fill(Some(0.0));
+    early[20..60].fill(Some(15.0));
+    let early = compared(&early, &triangle(2.0), Kind::Pillow);
+    assert!(!early.is_whole && early.modelled_peak_mm.is_none(), "a pillow that fails after an early thaw");
     let mut broken = whole(&triangle(2.0));
     broken[180..].fill(None);
     let broken = compared(&broken, &triangle(2.0), Kind::Pillow);

@@ -8,6 +8,9 @@ use crate::snow::{DegreeRule, PhaseRule};
 use crate::units::UnitSystem;
 use maud::{Markup, html};
 
+/// Where the page says what is worth a second look.
+pub(super) const SECOND_LOOK: &str = "second-look";
+
 /// The section.
 pub(super) fn section(study: &Study<'_>) -> Markup {
     let (snow, reader) = (study.snow, study.reader);
@@ -44,7 +47,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             p { @for (at, (key, value)) in study.defaults.iter().enumerate() { @if at > 0 { ", " } code { (key) " = " (value) } } }
         }
         @if !study.unlikely.is_empty() {
-            h3 { "Worth a second look" @if reader.units != UnitSystem::Metric { " (in the scenario's metric units)" } }
+            h3 id=(SECOND_LOOK) { "Worth a second look" @if reader.units != UnitSystem::Metric { " (in the scenario's metric units)" } }
             ul { @for notice in study.unlikely { li { code { (notice.about) } ": " (notice.why) } } }
         }
     }

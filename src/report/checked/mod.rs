@@ -156,23 +156,29 @@ impl Checked<'_> {
             });
             page.line("  as global warming", of_each.collect::<Vec<_>>().join("; "));
         }
-        let changes: Vec<f64> = self
+        let changes: Vec<[f64; 12]> = self
             .levels_c
             .iter()
-            .map(|level_c| {
-                let factor = self.warming.precipitation.factor(*level_c);
-                100.0 * (factor.iter().sum::<f64>() / 12.0 - 1.0)
-            })
+            .map(|level_c| self.warming.precipitation.factor(*level_c).map(|factor| 100.0 * (factor - 1.0)))
             .collect();
-        if changes.iter().all(|change| *change == 0.0) {
+        if changes.iter().flatten().all(|change| *change == 0.0) {
             page.line("precipitation", "the same at every level");
         } else {
-            let of_each =
-                names.iter().zip(changes).map(|(name, change)| format!("{} % at {name}", signed(change, 1)));
-            page.line(
-                "precipitation",
-                format!("mean of the months: {}", of_each.collect::<Vec<_>>().join(", ")),
-            );
+            let of_each = names.iter().zip(&changes).map(|(name, months)| {
+                let [low, high] = [f64::min, f64::max].map(|end| months.iter().copied().fold(months[0], end));
+                let range = if low == high {
+                    signed(low, 1)
+                } else {
+                    format!("{} to {}", signed(low, 1), signed(high, 1))
+                };
+                format!("{range} % at {name}")
+            });
+            page.line("precipitation", of_each.collect::<Vec<_>>().join(", "));
+        }
+        let [low, high] = [self.warming.tmin_monthly_shape, self.warming.tmax_monthly_shape];
+        if low.iter().chain(&high).any(|month| *month != 1.0) {
+            page.line("shape for minima", format!("{low:?} from January on"));
+            page.line("shape for maxima", format!("{high:?}"));
         }
     }
 

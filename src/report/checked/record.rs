@@ -42,12 +42,14 @@ impl Checked<'_> {
                 fixed(counts.dry_for_want_of_data_days as f64, 0)
             ),
         );
-        let taken = counts.impossible_cells + counts.far_temperature_cells + counts.stuck_temperature_cells;
         page.line(
             "taken as missing",
             format!(
-                "{} that cannot be, {} with the minimum above the maximum",
-                counted(taken, "cell"),
+                "{} that cannot be, {} far from their time of year, {} that stood still; {} with the minimum above the \
+                 maximum",
+                counted(counts.impossible_cells, "cell"),
+                fixed(counts.far_temperature_cells as f64, 0),
+                fixed(counts.stuck_temperature_cells as f64, 0),
                 counted(counts.crossed_temperature_days, "day")
             ),
         );

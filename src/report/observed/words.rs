@@ -71,10 +71,11 @@ fn melt_out(error: &DateError) -> String {
     )
 }
 
-/// A line a water year: observed and modelled peak and survey-date SWE, and the error of melt-out.
+/// A head and a line a water year: observed and modelled peak and survey-date SWE, and the error of melt-out.
 fn by_year(comparison: &Comparison, reader: Reader) -> String {
     let unit = reader.units.depth().suffix;
-    let mut text = format!("  {:<12}{:>6}", "water year", "NSE");
+    let mut text = String::from("  by year, observed : modelled\n");
+    let _ = write!(text, "  {:<12}{:>6}", "water year", "NSE");
     if comparison.peak.is_some() {
         let _ = write!(text, "{:>16}", format!("peak, {unit}"));
     }

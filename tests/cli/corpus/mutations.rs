@@ -61,8 +61,14 @@ fn read_all(scenario: &[u8], bands: &[u8], record: &[u8]) {
         }
         if let (Some(typed), Some(season), Ok(record)) = (&draft.weather, &draft.season, text(record)) {
             let (start, survey) = (season.water_year_starts, season.survey_dates[0]);
-            match thawline::weather::read("weather.csv", &record, &typed.columns, start, survey, typed.limits)
-            {
+            match thawline::weather::read(
+                "weather.csv",
+                &record,
+                &typed.columns,
+                start,
+                survey,
+                &typed.limits,
+            ) {
                 Ok(record) => drop(record.unlikely(false)),
                 Err(more) => faults.extend(more),
             }

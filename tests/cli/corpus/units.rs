@@ -91,7 +91,8 @@ second look: weather.precipitation: 608 amounts above 500 mm in a day; the first
     insta::assert_snapshot!(accepted(&daily), @r#"
 second look: weather.precipitation.gauge: the column falls on 274 days and rises on 273, as daily amounts do; read so it would be 822 mm a year: gauge = "daily"?
 second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
-second look: weather.precipitation: 7377 mm of small falls taken for noise: does the gauge accumulate, and in this unit?
+second look: weather.precipitation: 2463 mm of small falls taken for noise: does the gauge accumulate, and in this unit?
+second look: weather.precipitation: 91 falls of the gauge to nearly nothing; the first on 2002-10-04 (line 735): from 12.0 mm to 0.0 mm. Was it emptied? They are less than reset_tolerance_mm = 50, so taken for noise; state a smaller one
 "#);
 }
 
