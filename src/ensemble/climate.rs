@@ -52,18 +52,14 @@ pub fn band_climates(
     let mut engine = Engine::new(lanes, true);
     let mut climates = vec![BandClimate::default(); lanes.count()];
     let mut winter_days = 0;
-    for span in &weather.years {
-        if !span.follows {
-            engine.restart();
-        }
+    engine.years(weather, |span, block| {
         let view = weather.view(span);
-        let block = engine.year(view)?;
         for (band, climate) in climates.iter_mut().enumerate() {
             let column = lanes.column(0, band);
             climate.seasonal_years += usize::from(is_seasonal(longest_cover_days(block, column)));
             climate.years_not_gone += usize::from(keeps_snow(block, column));
         }
-        let Some(detail) = &block.detail else { continue };
+        let Some(detail) = &block.detail else { return Ok(()) };
         for (day, month) in view.month.iter().enumerate() {
             let is_winter = winter.0.contains(month);
             winter_days += usize::from(is_winter);
@@ -77,7 +73,8 @@ pub fn band_climates(
                 }
             }
         }
-    }
+        Ok::<(), OpenLedger>(())
+    })?;
     let (years, winter_days) = (weather.years.len() as f64, winter_days as f64);
     for climate in &mut climates {
         climate.precipitation_mm /= years;

@@ -26,16 +26,13 @@ pub fn record_years(
     let mut engine = Engine::new(lanes, false);
     let mut years = Vec::with_capacity(weather.years.len());
     let mut taken = Vec::new();
-    for span in &weather.years {
-        if !span.follows {
-            engine.restart();
-        }
-        let block = engine.year(weather.view(span))?;
+    engine.years(weather, |span, block| {
         let width = block.width;
         taken.resize(measures.list().len() * width, 0.0);
         measures.take(block, &mut taken);
         let values = taken.chunks_exact(width).map(|row| row[lanes.first_mix_column()]).collect();
         years.push(RecordYear { water_year: span.water_year, values });
-    }
+        Ok::<(), OpenLedger>(())
+    })?;
     Ok(years)
 }

@@ -56,15 +56,12 @@ pub fn compare(sites: &[Site<'_>], model: &Model<'_>) -> Result<Vec<Comparison>,
     let lanes = Lanes::new(&[specs.collect()]);
     let mut engine = Engine::new(&lanes, false);
     let mut years: Vec<Vec<ComparedYear>> = vec![Vec::new(); sites.len()];
-    for span in &model.weather.years {
-        if !span.follows {
-            engine.restart();
-        }
-        let block = engine.year(model.weather.view(span))?;
+    engine.years(model.weather, |span, block| {
         for (place, (site, years)) in sites.iter().zip(&mut years).enumerate() {
             years.extend(compare_year(site, span, block, lanes.column(0, place), model.season));
         }
-    }
+        Ok::<(), OpenLedger>(())
+    })?;
     let surveys = &model.season.survey_dates;
     let put_together = |(site, years): (&Site<'_>, Vec<ComparedYear>)| {
         let about = About {

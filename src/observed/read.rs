@@ -11,6 +11,8 @@ use std::collections::BTreeMap;
 /// No snowpack at a station has held more: even the deepest on record, not quite 12 m of snow, would have to be water
 /// (record from memory), mm.
 const MOST_MM: f64 = 12_000.0;
+/// A pillow without snow drifts so far below 0, mm; such a reading is 0.
+const DRIFT_MM: f64 = 25.0;
 /// A file of more lines is one of something else.
 const MOST_LINES: usize = 400 * 366;
 
@@ -26,10 +28,11 @@ struct Line {
 /// Reads a site's file. `file` names it in faults.
 ///
 /// Lines may stand in any order. A start-of-day reading dated d is S(d), an end-of-day one S(d + 1). Readings beyond 12 000 mm
-/// are taken as missing, counted and said.
+/// and those far below 0 are taken as missing, those a little below 0 as 0, as a pillow without snow drifts; all of it is
+/// counted and said.
 ///
 /// # Errors
-/// Every fault of the file: columns that are not there, cells that are neither number nor missing mark, negative SWE,
+/// Every fault of the file: columns that are not there, cells that are neither number nor missing mark,
 /// dates that cannot be read or stand twice, a file without a reading.
 pub fn read(file: &str, text: &str, columns: &Columns) -> Result<Observations, Vec<Fault>> {
     let table = Table::open(file, text, &columns.format).map_err(|fault| vec![fault])?;
@@ -82,16 +85,6 @@ fn read_swe(
     tally: &mut Tally,
 ) -> Option<f64> {
     let number = tally.keep(table.number(row, column)).flatten()?;
-    if number < 0.0 {
-        tally.push(table.cell_fault(
-            row,
-            column,
-            "SWE of 0 or more",
-            "if it stands for 'not measured', add it to 'missing' where the scenario names the file; if a pillow drifts \
-             below 0 without snow, write 0",
-        ));
-        return None;
-    }
     Some(columns.swe.unit.to_millimetres(number) + 0.0)
 }
 
@@ -158,13 +151,45 @@ fn sift(lines: &mut [Line]) -> Vec<Suspicion> {
         lines.iter().filter_map(|line| line.swe_mm.map(|swe_mm| (*line, swe_mm))).collect();
     let (impossible, possible): (Vec<_>, Vec<_>) =
         read.into_iter().partition(|(_, swe_mm)| *swe_mm > MOST_MM);
+    let (negative, possible): (Vec<_>, Vec<_>) =
+        possible.into_iter().partition(|(_, swe_mm)| *swe_mm < -DRIFT_MM);
+    let drifted: Vec<_> = possible.iter().copied().filter(|(_, swe_mm)| *swe_mm < 0.0).collect();
     for line in lines.iter_mut() {
-        line.swe_mm = line.swe_mm.filter(|swe_mm| *swe_mm <= MOST_MM);
+        let read = line.swe_mm.filter(|swe_mm| (-DRIFT_MM..=MOST_MM).contains(swe_mm));
+        line.swe_mm = read.map(|swe_mm| swe_mm.max(0.0));
     }
+    let below = suspicion("readings far below 0", "Do they stand for 'not measured'?", true, &negative);
+    let drift = suspicion("readings a little below 0, read as 0", "", false, &drifted);
     let what = "readings above 12 000 mm, which no snowpack has held";
     let beyond = suspicion(what, "Is the unit right?", true, &impossible);
     let is_constant = possible.len() > 2 && possible.iter().all(|(_, swe_mm)| *swe_mm == possible[0].1);
     let same = is_constant
         .then(|| suspicion("readings, all of them the same", "Is it the right column?", false, &possible));
-    beyond.into_iter().chain(same.flatten()).collect()
+    [beyond, below, drift, same.flatten()].into_iter().flatten().collect()
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::observed::SweColumn;
+    use crate::table::{DateColumn, Format};
+    use crate::units::DepthUnit;
+
+    /// A pillow without snow drifts a little; a mark that nobody declared is no reading.
+    #[test]
+    fn below_nothing_there_is_nothing() {
+        let columns = Columns {
+            date: DateColumn { columns: vec!["date".to_owned()], format: "%Y-%m-%d".to_owned() },
+            swe: SweColumn { column: "swe".to_owned(), unit: DepthUnit::Inch },
+            reading: Reading::StartOfDay,
+            format: Format::default(),
+        };
+        let text = "date,swe\n2001-10-01,-0.2\n2001-10-02,-888\n2001-10-03,1.0\n";
+        let read = read("snow.csv", text, &columns).unwrap();
+        let states: Vec<f64> = read.states.iter().map(|state| state.swe_mm).collect();
+        assert_eq!((states, read.counts.impossible_readings), (vec![0.0, 25.4], 1));
+        let said: Vec<(usize, bool)> =
+            read.suspicions.iter().map(|it| (it.count, it.is_taken_as_missing)).collect();
+        assert_eq!(said, [(1, true), (1, false)]);
+    }
 }

@@ -31,12 +31,8 @@ pub enum DailyError {
 pub fn daily_csv(lanes: &Lanes, weather: &Series, into: &mut impl Write) -> Result<(), DailyError> {
     let mut engine = Engine::new(lanes, true);
     writeln!(into, "{HEADER}")?;
-    for span in &weather.years {
-        if !span.follows {
-            engine.restart();
-        }
-        let block = engine.year(weather.view(span))?;
-        let Some(detail) = &block.detail else { continue };
+    engine.years(weather, |_, block| {
+        let Some(detail) = &block.detail else { return Ok(()) };
         for day in 0..block.days {
             let date = date_of(block.first, day + 1);
             let lane_row =
@@ -61,8 +57,8 @@ pub fn daily_csv(lanes: &Lanes, weather: &Series, into: &mut impl Write) -> Resu
             write!(into, "{date},basin")?;
             write_row(into, rows.map(|row| lanes.mix(0, row)))?;
         }
-    }
-    Ok(())
+        Ok(())
+    })
 }
 
 /// Writes a row's numbers and SWE, ice and liquid together.

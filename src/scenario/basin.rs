@@ -65,7 +65,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<BasinTyped> {
 
 /// One negative number, or twelve of any sign (inversions make a month positive).
 fn gradient(section: &mut Section<'_>, key: &'static str) -> Option<[f64; 12]> {
-    let months = section.monthly(key, true)?;
+    let months = section.one_or_monthly(key)?;
     let is_one = months.iter().all(|value| *value == months[0]);
     if is_one && months[0] > 0.0 {
         section.fault(Fault::key(

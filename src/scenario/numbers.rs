@@ -148,11 +148,16 @@ impl Section<'_> {
         Some(numbers.into_iter().map(|number| number as i32).collect())
     }
 
-    /// Twelve numbers, January first, if they were typed; with `or_one`, one number for all months will do.
-    pub fn monthly(&mut self, key: &'static str, or_one: bool) -> Option<[f64; 12]> {
-        if or_one && self.value(key).is_some_and(|value| !matches!(value, DeValue::Array(_))) {
-            return self.number(key).map(|number| [number; 12]);
+    /// Twelve numbers, January first, or one for all months, if they were typed.
+    pub fn one_or_monthly(&mut self, key: &'static str) -> Option<[f64; 12]> {
+        match self.value(key)? {
+            DeValue::Array(_) => self.monthly(key),
+            _ => self.number(key).map(|number| [number; 12]),
         }
+    }
+
+    /// Twelve numbers, January first, if they were typed.
+    pub fn monthly(&mut self, key: &'static str) -> Option<[f64; 12]> {
         let numbers = self.numbers(key)?;
         let found = numbers.len();
         let twelve = <[f64; 12]>::try_from(numbers).ok();

@@ -66,7 +66,7 @@ fn read_shapes(section: &mut Section<'_>) -> [[f64; 12]; 2] {
 }
 
 fn shape(section: &mut Section<'_>, key: &'static str) -> Option<[f64; 12]> {
-    let shape = section.monthly(key, false)?;
+    let shape = section.monthly(key)?;
     if shape.iter().any(|value| !(-10.0..=10.0).contains(value)) {
         section.fault(Fault::key(
             section.path_of(key),

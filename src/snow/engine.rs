@@ -11,7 +11,7 @@ use super::ledger::{self, OpenLedger};
 use super::params::{DegreeRule, PhaseRule};
 use super::passes::{diurnal_degrees_row, mean_degrees_row, mean_row, split_row, store_row};
 use super::{linear_snow_fraction, step_snow_fraction, tanh_snow_fraction};
-use crate::weather::YearView;
+use crate::weather::{Series, YearSpan, YearView};
 use multiversion::multiversion;
 
 /// Which compiled form of the row passes is run. All of them give the same bits; the narrower ones are for the tests
@@ -103,6 +103,25 @@ impl<'l> Engine<'l> {
         }
         self.close_ledgers()?;
         Ok(&mut self.block)
+    }
+
+    /// Runs all years of a series, each on the snow that the one before it left, or on bare ground where it does not follow
+    /// on it, and hands each to `look`.
+    ///
+    /// # Errors
+    /// A lane whose water ledger does not close, or what `look` says.
+    pub fn years<E: From<OpenLedger>>(
+        &mut self,
+        weather: &Series,
+        mut look: impl FnMut(&YearSpan, &mut YearBlock) -> Result<(), E>,
+    ) -> Result<(), E> {
+        for span in &weather.years {
+            if !span.follows {
+                self.restart();
+            }
+            look(span, self.year(weather.view(span))?)?;
+        }
+        Ok(())
     }
 
     fn close_ledgers(&self) -> Result<(), OpenLedger> {

@@ -112,7 +112,9 @@ pub fn read(
     };
     let (usable, skipped) = screening.sort_years();
     if usable.is_empty() {
-        return Err(vec![nothing_usable(file, &skipped, &declared)]);
+        let is_swapped = 2 * sifted.crossed_days > days.line.len();
+        let mend = if is_swapped { SWAPPED.to_owned() } else { mend_of_unusable(&skipped, &declared) };
+        return Err(vec![nothing_usable(file, &skipped, mend)]);
     }
 
     let mut series = Series::default();
@@ -146,7 +148,7 @@ pub fn read(
     Ok(Record { series, skipped, counts, suspicions, has_daily_range, declared })
 }
 
-fn nothing_usable(file: &str, skipped: &[SkippedYear], declared: &Declared) -> Fault {
+fn nothing_usable(file: &str, skipped: &[SkippedYear], mend: String) -> Fault {
     let mut found = String::from("no water year that can be used");
     for year in skipped.iter().take(5) {
         let why: Vec<String> = year.why.iter().map(|why| why.words(UnitSystem::Metric)).collect();
@@ -155,10 +157,24 @@ fn nothing_usable(file: &str, skipped: &[SkippedYear], declared: &Declared) -> F
     if skipped.len() > 5 {
         found += &format!("; and {} more", skipped.len() - 5);
     }
+    Fault {
+        place: crate::fault::Place::File(file.to_owned()),
+        found,
+        expected: "at least one whole water year of temperature and precipitation".to_owned(),
+        mend,
+    }
+}
+
+/// What to do where every day's minimum lies above its maximum.
+const SWAPPED: &str =
+    "the minimum lies above the maximum on most days: exchange the columns of tmin and tmax in [weather]";
+
+/// What to do about a record in which no year can be used: about a likely slip of a unit, about its length, or in general.
+fn mend_of_unusable(skipped: &[SkippedYear], declared: &Declared) -> String {
     let slips = declared.unlikely();
     let is_short =
         skipped.iter().flat_map(|year| &year.why).all(|why| matches!(why, Why::BeyondRecord { .. }));
-    let mend = if let [_, ..] = slips.as_slice() {
+    if let [_, ..] = slips.as_slice() {
         let slips: Vec<String> =
             slips.iter().map(|slip| format!("check {}: {}", slip.about, slip.why)).collect();
         slips.join("; ")
@@ -169,11 +185,5 @@ fn nothing_usable(file: &str, skipped: &[SkippedYear], declared: &Declared) -> F
         "check units, missing marks and 'water_year_starts'; the limits temperature_gap_days and \
          missing_days_allowed stand in [weather]"
             .to_owned()
-    };
-    Fault {
-        place: crate::fault::Place::File(file.to_owned()),
-        found,
-        expected: "at least one whole water year of temperature and precipitation".to_owned(),
-        mend,
     }
 }

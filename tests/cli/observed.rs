@@ -264,14 +264,6 @@ error: observed_swe[2].file: nowhere.csv: there is no such file
    |
    = help: the path is relative to the scenario's folder
 
-error: swe_mm: '-0.2'
- --> snow.csv:3:12
-  |
-3 | 2001-03-01,-0.2
-  |            ^^^^ expected SWE of 0 or more
-  |
-  = help: if it stands for 'not measured', add it to 'missing' where the scenario names the file; if a pillow drifts below 0 without snow, write 0
-
 error: date: '2001-04-02'
  --> snow.csv:4:1
   |
@@ -296,7 +288,7 @@ error: swe_mm: 'deep'
   |
   = help: if it is such a mark, add it to 'missing' where the scenario names the file
 
-9 faults; nothing was run
+8 faults; nothing was run
 "#);
 }
 
