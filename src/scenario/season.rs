@@ -29,8 +29,14 @@ pub(super) fn read(mut section: Section<'_>, is_southern: bool) -> Option<Season
         section.day_pairs("volume_windows")
     } else {
         section.day_pairs("volume_windows");
-        section.default("volume_windows", format!("[{window:?}]"));
-        MonthDay::parse(window[0]).zip(MonthDay::parse(window[1])).map(|(from, to)| vec![[from, to]])
+        let usual = MonthDay::parse(window[0]).zip(MonthDay::parse(window[1])).map(|(from, to)| [from, to]);
+        let windows: Vec<[MonthDay; 2]> = usual
+            .into_iter()
+            .filter(|usual| starts.is_some_and(|starts| fits(WaterYearStart(starts), *usual)))
+            .collect();
+        let words = windows.iter().map(|[from, to]| format!("[\"{from}\", \"{to}\"]"));
+        section.default("volume_windows", format!("[{}]", words.collect::<Vec<_>>().join(", ")));
+        Some(windows)
     };
     if let (Some(starts), Some(windows)) = (starts, &windows) {
         check_windows(&section, WaterYearStart(starts), windows);
@@ -63,12 +69,15 @@ fn read_surveys(section: &Section<'_>, texts: &[String]) -> Option<Vec<MonthDay>
     Some(days)
 }
 
-fn check_windows(section: &Section<'_>, starts: WaterYearStart, windows: &[[MonthDay; 2]]) {
+/// Whether a window ends in the water year in which it begins.
+fn fits(starts: WaterYearStart, [from, to]: [MonthDay; 2]) -> bool {
     let first = starts.first_day(2002);
+    day_of_water_year(first, from) <= day_of_water_year(first, to)
+}
+
+fn check_windows(section: &Section<'_>, starts: WaterYearStart, windows: &[[MonthDay; 2]]) {
     for (at, [from, to]) in windows.iter().enumerate() {
-        if day_of_water_year(first, *from) > day_of_water_year(first, *to)
-            || windows[..at].contains(&[*from, *to])
-        {
+        if !fits(starts, [*from, *to]) || windows[..at].contains(&[*from, *to]) {
             section.fault(Fault::key(
                 section.path_of(&format!("volume_windows[{at}]")),
                 format!("{from} to {to}"),
