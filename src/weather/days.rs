@@ -71,11 +71,13 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
         let measured = read_row(&table, &row, columns, &places, &mut tally);
         lines.extend(date.map(|date| Line { date, number: row.line, measured }));
     }
-    dates.finish(&table, &mut tally);
+    let are_dates_read = dates.finish(&table, &mut tally);
     if lines.first().map(|line| line.date) > lines.last().map(|line| line.date) {
         lines.reverse();
     }
-    complain_of_order(&table, &dates, &out_of_order(&lines), &mut tally);
+    if are_dates_read {
+        complain_of_order(&table, &dates, &out_of_order(&lines), &mut tally);
+    }
     if !tally.is_empty() {
         return Err(tally.into_faults());
     }
