@@ -2,6 +2,7 @@
 
 mod advice;
 mod bands;
+mod columns;
 mod dates;
 mod mutations;
 mod scenarios;
