@@ -24,10 +24,15 @@ const USUAL_C_PER_KM: std::ops::RangeInclusive<f64> = -8.0..=-2.0;
 /// Precipitation gradients in general use, percent per 100 m; no single source.
 const USUAL_PCT_PER_100M: std::ops::RangeInclusive<f64> = 0.0..=10.0;
 
-pub(super) fn read(mut section: Section<'_>) -> Option<BasinTyped> {
+/// The file of the bands stands alone too: it can be looked into although another key has a fault.
+pub(super) fn read(mut section: Section<'_>) -> (Option<HypsometryTyped>, Option<BasinTyped>) {
+    let hypsometry = read_hypsometry(&mut section);
+    (hypsometry.clone(), read_around(section, hypsometry))
+}
+
+fn read_around(mut section: Section<'_>, hypsometry: Option<HypsometryTyped>) -> Option<BasinTyped> {
     let latitude_deg =
         section.required_number("latitude_deg", -90.0..=90.0, "degrees, negative in the southern hemisphere");
-    let hypsometry = read_hypsometry(&mut section);
     let both = gradient(&mut section, "temperature_gradient_c_per_km");
     let tmin = gradient(&mut section, "tmin_temperature_gradient_c_per_km").or(both);
     let tmax = gradient(&mut section, "tmax_temperature_gradient_c_per_km").or(both);
