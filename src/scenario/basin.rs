@@ -40,13 +40,13 @@ fn read_around(mut section: Section<'_>, hypsometry: Option<HypsometryTyped>) ->
         section.required_number(
             "temperature_gradient_c_per_km",
             -12.0..=0.0,
-            "add it; it is negative, since it is colder higher up, and -6.5 is the standard atmosphere's",
+            "it is negative, since it is colder higher up, and -6.5 is the standard atmosphere's",
         );
     }
     let pct_per_100m = section.required_number(
         "precipitation_gradient_pct_per_100m",
         -20.0..=50.0,
-        "add it, in percent of the station's precipitation; 0 to 10 is usual, and there is no default",
+        "in percent of the station's precipitation; 0 to 10 is usual, and there is no default",
     );
     if pct_per_100m.is_some_and(|pct| !USUAL_PCT_PER_100M.contains(&pct)) {
         section.unlikely(

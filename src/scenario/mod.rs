@@ -8,6 +8,7 @@ mod basin;
 mod days;
 mod document;
 mod draw;
+mod elevation;
 mod format;
 mod hypsometry;
 mod levels;

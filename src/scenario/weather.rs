@@ -1,5 +1,6 @@
 //! `[weather]`: the station's file and how to read it.
 
+use super::elevation::Height;
 use super::format::{read_date, read_format};
 use super::section::Section;
 use crate::fault::Fault;
@@ -49,7 +50,7 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<RecordSource>, Option<We
         section.required_text("file", "the path of the station's CSV file", "add file = \"weather.csv\"");
     section.names_file("weather.file", file.as_deref());
     let station_elevation_m =
-        section.required_number("station_elevation_m", -500.0..=9000.0, "add it, in metres above the sea");
+        section.required_height(&Height::above_the_sea("station_elevation_m", "station_elevation_ft"));
     let date = read_date(section.section("date"));
     let temperature = read_temperatures(&mut section);
     let precipitation = read_precipitation(section.required_section("precipitation"));

@@ -4,6 +4,8 @@ mod advice;
 mod bands;
 mod columns;
 mod dates;
+mod faults_at_once;
+mod feet;
 mod mutations;
 mod scenarios;
 mod tables;
