@@ -1,6 +1,6 @@
 //! Elevation bands: the area-elevation table, read, checked and sorted.
 
-use super::columns::{Column, both};
+use super::columns::{Column, advice, both};
 use crate::fault::Fault;
 use crate::table::{Format, Row, Table, Tally, joined};
 use crate::units::{AreaUnit, LengthUnit};
@@ -60,10 +60,14 @@ impl Default for BandColumns {
 pub fn read_bands(file: &str, text: &str, columns: &BandColumns) -> Result<Vec<Band>, Vec<Fault>> {
     let table = Table::open(file, text, &columns.format).map_err(|fault| vec![fault])?;
     let lengths = &LengthUnit::NAMES;
-    let edges = both(columns.lower.find(&table, lengths), columns.upper.find(&table, lengths));
-    let area = columns.area.find(&table, &AreaUnit::NAMES).map_err(|fault| vec![fault]);
-    let mean = if columns.mean.is_there(&table, lengths) {
-        columns.mean.find(&table, lengths).map(Some).map_err(|fault| vec![fault])
+    let BandColumns { lower, upper, area, mean, .. } = columns;
+    let namings =
+        [lower.naming(&table, lengths), upper.naming(&table, lengths), area.naming(&table, &AreaUnit::NAMES)];
+    let advice = advice("bands", namings);
+    let edges = both(lower.find(&table, lengths, &advice), upper.find(&table, lengths, &advice));
+    let area = area.find(&table, &AreaUnit::NAMES, &advice).map_err(|fault| vec![fault]);
+    let mean = if mean.is_there(&table, lengths) {
+        mean.find(&table, lengths, &advice).map(Some).map_err(|fault| vec![fault])
     } else {
         Ok(None)
     };

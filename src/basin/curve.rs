@@ -1,7 +1,7 @@
 //! A hypsometric curve, the area below each elevation, cut into bands of a stated thickness.
 
 use super::bands::{Band, MOST_BANDS};
-use super::columns::{Column, both};
+use super::columns::{Column, advice, both};
 use crate::fault::Fault;
 use crate::table::{Format, Row, Table, Tally, joined};
 use crate::units::{AreaUnit, LengthUnit};
@@ -38,8 +38,11 @@ struct Point {
 /// area that shrinks upward or is not 0 at the lowest point, more bands than can be meant.
 pub fn read_curve(file: &str, text: &str, columns: &CurveColumns) -> Result<Vec<Band>, Vec<Fault>> {
     let table = Table::open(file, text, &columns.format).map_err(|fault| vec![fault])?;
-    let elevation = columns.elevation.find(&table, &LengthUnit::NAMES);
-    let area = columns.area_below.find(&table, &AreaUnit::NAMES);
+    let (lengths, areas) = (&LengthUnit::NAMES, &AreaUnit::NAMES);
+    let namings = [columns.elevation.naming(&table, lengths), columns.area_below.naming(&table, areas)];
+    let advice = advice("area_elevation_curve", namings);
+    let elevation = columns.elevation.find(&table, lengths, &advice);
+    let area = columns.area_below.find(&table, areas, &advice);
     let (elevation, area) = match (elevation, area) {
         (Ok(elevation), Ok(area)) => (elevation, area),
         (elevation, area) => {

@@ -54,8 +54,8 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
     let observed = read_observed_of(&draft, &folder, &mut faults);
     for (key, name) in &draft.named_files {
         let is_read = match key.as_str() {
-            key if key.starts_with("basin.") => draft.basin.is_some(),
-            "weather.file" => draft.weather.is_some() && draft.season.is_some(),
+            key if key.starts_with("basin.") => draft.hypsometry.is_some(),
+            "weather.file" => draft.record_source.is_some() && draft.season.is_some(),
             of_site => draft.observed.iter().flatten().any(|site| of_site == file_key(site)),
         };
         if !is_read {
@@ -122,17 +122,16 @@ fn read_bands_of(
     draft: &Draft,
     folder: &Path,
 ) -> Result<Option<(Vec<crate::basin::Band>, InputFile)>, Vec<Fault>> {
-    let Some(basin) = &draft.basin else {
+    let Some(typed) = &draft.hypsometry else {
         return Ok(None);
     };
-    let typed = &basin.hypsometry;
     let file = read_data(folder, &typed.file, typed.key, typed.encoding()).map_err(|fault| vec![fault])?;
     let bands = typed.bands(&file.name, &file.text)?;
     Ok(Some((bands, file)))
 }
 
 fn read_record_of(draft: &Draft, folder: &Path) -> Result<Option<(Record, InputFile)>, Vec<Fault>> {
-    let (Some(typed), Some(season)) = (&draft.weather, &draft.season) else {
+    let (Some(typed), Some(season)) = (&draft.record_source, &draft.season) else {
         return Ok(None);
     };
     let file = read_data(folder, &typed.file, "weather.file", typed.columns.format.encoding)

@@ -50,9 +50,11 @@ pub fn read(file: &str, text: &str, columns: &Columns) -> Result<Observations, V
             break;
         }
     }
-    dates.finish(&table, &mut tally);
+    let are_dates_read = dates.finish(&table, &mut tally);
     lines.sort_by_key(|line| line.date);
-    complain_of_repeats(&table, &dates, &lines, &mut tally);
+    if are_dates_read {
+        complain_of_repeats(&table, &dates, &lines, &mut tally);
+    }
     if !tally.is_empty() {
         return Err(tally.into_faults());
     }

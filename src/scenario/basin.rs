@@ -24,10 +24,15 @@ const USUAL_C_PER_KM: std::ops::RangeInclusive<f64> = -8.0..=-2.0;
 /// Precipitation gradients in general use, percent per 100 m; no single source.
 const USUAL_PCT_PER_100M: std::ops::RangeInclusive<f64> = 0.0..=10.0;
 
-pub(super) fn read(mut section: Section<'_>) -> Option<BasinTyped> {
+/// The file of the bands stands alone too: it can be looked into although another key has a fault.
+pub(super) fn read(mut section: Section<'_>) -> (Option<HypsometryTyped>, Option<BasinTyped>) {
+    let hypsometry = read_hypsometry(&mut section);
+    (hypsometry.clone(), read_around(section, hypsometry))
+}
+
+fn read_around(mut section: Section<'_>, hypsometry: Option<HypsometryTyped>) -> Option<BasinTyped> {
     let latitude_deg =
         section.required_number("latitude_deg", -90.0..=90.0, "degrees, negative in the southern hemisphere");
-    let hypsometry = read_hypsometry(&mut section);
     let both = gradient(&mut section, "temperature_gradient_c_per_km");
     let tmin = gradient(&mut section, "tmin_temperature_gradient_c_per_km").or(both);
     let tmax = gradient(&mut section, "tmax_temperature_gradient_c_per_km").or(both);
@@ -35,13 +40,13 @@ pub(super) fn read(mut section: Section<'_>) -> Option<BasinTyped> {
         section.required_number(
             "temperature_gradient_c_per_km",
             -12.0..=0.0,
-            "add it; it is negative, since it is colder higher up, and -6.5 is the standard atmosphere's",
+            "it is negative, since it is colder higher up, and -6.5 is the standard atmosphere's",
         );
     }
     let pct_per_100m = section.required_number(
         "precipitation_gradient_pct_per_100m",
         -20.0..=50.0,
-        "add it, in percent of the station's precipitation; 0 to 10 is usual, and there is no default",
+        "in percent of the station's precipitation; 0 to 10 is usual, and there is no default",
     );
     if pct_per_100m.is_some_and(|pct| !USUAL_PCT_PER_100M.contains(&pct)) {
         section.unlikely(

@@ -89,7 +89,7 @@ pub fn located(fault: &Fault, drawing: &Drawing<'_>) -> Located {
         name: shortened(name),
         found: shortened(&fault.found),
         expected: plain(&fault.expected),
-        mend: plain(&fault.mend),
+        mend: fault.mend.split('\n').map(plain).collect::<Vec<_>>().join("\n"),
     }
 }
 

@@ -1,5 +1,6 @@
 //! `basin.bands` or `basin.area_elevation_curve`: the basin's area by elevation, and how its file is to be read.
 
+use super::elevation::Height;
 use super::format::read_layout;
 use super::section::Section;
 use crate::basin::{Band, BandColumns, Column, CurveColumns, read_bands, read_curve};
@@ -43,6 +44,15 @@ impl HypsometryTyped {
         }
     }
 }
+
+/// The height of the bands to cut from a curve.
+const BAND_THICKNESS: Height = Height {
+    metres: "band_thickness_m",
+    feet: "band_thickness_ft",
+    range_m: 1.0..=2000.0,
+    from: " from edge to edge",
+    hint: "; 100 m is usual",
+};
 
 const EXPECTED: &str =
     "the path of a CSV file with lower_m, upper_m, area_km2 (or lower_ft, upper_ft, area_mi2)";
@@ -93,11 +103,7 @@ fn read_curve_table(mut section: Section<'_>) -> Option<HypsometryTyped> {
     let key = "basin.area_elevation_curve.file";
     let file = section.required_text("file", "the path of a CSV file", "add file = \"curve.csv\"");
     section.names_file(key, file.as_deref());
-    let band_thickness_m = section.required_number(
-        "band_thickness_m",
-        1.0..=2000.0,
-        "add it: the height of the bands to cut, in metres; 100 is usual",
-    );
+    let band_thickness_m = section.required_height(&BAND_THICKNESS);
     let elevation = column(&mut section, "elevation", &LengthUnit::NAMES);
     let area_below = column(&mut section, "area_below", &AreaUnit::NAMES);
     let format = read_layout(&mut section);

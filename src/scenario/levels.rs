@@ -13,6 +13,32 @@ const USUAL_LOCAL_PER_GLOBAL: std::ops::RangeInclusive<f64> = 0.8..=2.5;
 /// Global warming by the middle of any instrumental record so far, degC.
 const USUAL_ALREADY_C: std::ops::RangeInclusive<f64> = 0.0..=1.6;
 
+/// A difference of 1 degC is one of so many degF.
+const FAHRENHEIT_PER_CELSIUS: f64 = 1.8;
+
+/// How levels are typed.
+struct Typed {
+    key: &'static str,
+    unit: &'static str,
+    range: std::ops::RangeInclusive<f64>,
+    /// What a level beyond the range may have been meant to be.
+    mend: &'static str,
+}
+
+const IN_CELSIUS: Typed = Typed {
+    key: "levels_c",
+    unit: "degC",
+    range: POSSIBLE_C,
+    mend: "it is degC, not percent; levels_f = [...] takes degF",
+};
+/// The same range in degF.
+const IN_FAHRENHEIT: Typed = Typed {
+    key: "levels_f",
+    unit: "degF",
+    range: -18.0..=27.0,
+    mend: "it is degF that are added, not a temperature or percent",
+};
+
 /// The levels in the order in which they were typed, as warming of the basin, degC.
 pub(super) struct Levels {
     pub typed_c: Vec<f64>,
@@ -20,24 +46,46 @@ pub(super) struct Levels {
 }
 
 pub(super) fn read_levels(section: &mut Section<'_>) -> Option<Levels> {
+    let own = ["levels_c", "levels_f"].map(|key| section.has(key));
     if section.has("global") {
-        if section.has("levels_c") {
+        if let Some((key, _)) = ["levels_c", "levels_f"].iter().zip(own).find(|(_, is_typed)| *is_typed) {
             section.fault(Fault::key(
-                section.path_of("levels_c"),
-                "levels_c beside [warming.global]",
+                section.path_of(key),
+                format!("{key} beside [warming.global]"),
                 "one of the two",
                 "levels of the basin's own warming, or of global warming: take one out",
             ));
         }
         section.knows("levels_c");
+        section.knows("levels_f");
         return read_global(section.section("global"));
     }
     section.knows("global");
-    let levels = section.numbers("levels_c");
-    let typed_c = match levels {
-        Some(levels) => check(section, levels),
-        None if section.has("levels_c") => None,
-        None => {
+    let typed_c = match own {
+        [true, true] => {
+            section.knows("levels_c");
+            section.knows("levels_f");
+            section.fault(Fault::key(
+                section.path_of("levels_f"),
+                "levels_f beside levels_c",
+                "one of the two",
+                "take one of them out",
+            ));
+            None
+        }
+        [_, true] => {
+            section.knows("levels_c");
+            let levels = section.numbers("levels_f");
+            let typed = levels.and_then(|levels| check(section, &IN_FAHRENHEIT, levels));
+            typed.map(|levels| levels.into_iter().map(|level| level / FAHRENHEIT_PER_CELSIUS).collect())
+        }
+        [true, false] => {
+            section.knows("levels_f");
+            section.numbers("levels_c").and_then(|levels| check(section, &IN_CELSIUS, levels))
+        }
+        [false, false] => {
+            section.knows("levels_c");
+            section.knows("levels_f");
             section.default("levels_c", "[0, 1, 2, 3, 4]");
             Some(vec![0.0, 1.0, 2.0, 3.0, 4.0])
         }
@@ -55,7 +103,7 @@ fn read_global(mut section: Section<'_>) -> Option<Levels> {
             "for example levels_c = [1.5, 2, 3]",
         ));
     }
-    let levels = levels.and_then(|levels| check(&section, levels));
+    let levels = levels.and_then(|levels| check(&section, &IN_CELSIUS, levels));
     let local_per_global = section.required_number(
         "local_per_global",
         0.1..=5.0,
@@ -97,20 +145,17 @@ fn read_global(mut section: Section<'_>) -> Option<Levels> {
 }
 
 /// Every level within its range and once.
-fn check(section: &Section<'_>, levels: Vec<f64>) -> Option<Vec<f64>> {
+fn check(section: &Section<'_>, typed: &Typed, levels: Vec<f64>) -> Option<Vec<f64>> {
     let mut sound = true;
     let mut complain = |at: usize, found: String, expected: &str, mend: &str| {
-        section.fault(Fault::key(section.path_of(&format!("levels_c[{at}]")), found, expected, mend));
+        section.fault(Fault::key(section.path_of(&format!("{}[{at}]", typed.key)), found, expected, mend));
         sound = false;
     };
     for (at, level) in levels.iter().enumerate() {
-        if !POSSIBLE_C.contains(level) {
-            complain(
-                at,
-                level.to_string(),
-                "a warming from -10 to 15 degC",
-                "it is degC, not degF or percent",
-            );
+        if !typed.range.contains(level) {
+            let expected =
+                format!("a warming from {} to {} {}", typed.range.start(), typed.range.end(), typed.unit);
+            complain(at, level.to_string(), &expected, typed.mend);
         } else if levels[..at].contains(level) {
             complain(at, format!("{level} a second time"), "each level once", "take one of them out");
         }
@@ -118,10 +163,10 @@ fn check(section: &Section<'_>, levels: Vec<f64>) -> Option<Vec<f64>> {
     if levels.is_empty() || levels.len() > MOST_LEVELS {
         let found = format!("{} levels", levels.len());
         section.fault(Fault::key(
-            section.path_of("levels_c"),
+            section.path_of(typed.key),
             found,
             format!("1 to {MOST_LEVELS} levels"),
-            "for example levels_c = [0, 1, 2, 3]",
+            format!("for example {} = [0, 1, 2, 3]", typed.key),
         ));
         sound = false;
     }

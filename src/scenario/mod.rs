@@ -8,6 +8,7 @@ mod basin;
 mod days;
 mod document;
 mod draw;
+mod elevation;
 mod format;
 mod hypsometry;
 mod levels;
@@ -34,7 +35,7 @@ pub use observed::ObservedTyped;
 pub use realizations::RealizationsTyped;
 pub use report::ReportTyped;
 pub use warming::WarmingTyped;
-pub use weather::WeatherTyped;
+pub use weather::{RecordSource, WeatherTyped};
 
 use crate::fault::{Fault, Unlikely};
 use crate::season::SeasonSettings;
@@ -80,8 +81,12 @@ pub struct Draft {
     pub seed: u64,
     /// Data files that the scenario names, each with its key, also where the table around it has a fault.
     pub named_files: Vec<(String, String)>,
+    /// The file of the bands, also where another key of `[basin]` has a fault.
+    pub hypsometry: Option<HypsometryTyped>,
     /// `[basin]`.
     pub basin: Option<BasinTyped>,
+    /// The station's file, also where another key of `[weather]` has a fault.
+    pub record_source: Option<RecordSource>,
     /// `[weather]`.
     pub weather: Option<WeatherTyped>,
     /// `[season]`.
@@ -138,10 +143,10 @@ pub fn read(document: &Document<'_>) -> Draft {
         ));
     }
     let seed = top.whole_or("seed", 1, 0..=i64::MAX as u64);
-    let basin = basin::read(top.required_section("basin"));
+    let (hypsometry, basin) = basin::read(top.required_section("basin"));
     let is_southern = basin.as_ref().is_some_and(|basin| basin.latitude_deg < 0.0);
-    let weather = weather::read(top.required_section("weather"));
-    let has_daily_range = weather.as_ref().is_none_or(WeatherTyped::has_daily_range);
+    let (record_source, weather) = weather::read(top.required_section("weather"));
+    let has_daily_range = record_source.as_ref().is_none_or(RecordSource::has_daily_range);
     let season = season::read(top.section("season"), is_southern);
     let snow = snow::read(top.section("snow"), has_daily_range, is_southern);
     let warming = warming::read(top.section("warming"));
@@ -149,7 +154,8 @@ pub fn read(document: &Document<'_>) -> Draft {
     let report = report::read(top.section("report"));
     let observed = observed::read(top.sections("observed_swe"));
     top.finish();
-    let parts = (basin, weather, season, snow, warming, realizations, report, observed);
+    let parts =
+        (hypsometry, basin, record_source, weather, season, snow, warming, realizations, report, observed);
     let mut draft = notes.into_draft(title, seed, parts);
     document.keep_what_is_certain(&mut draft.faults);
     draft

@@ -1,6 +1,9 @@
 //! What is met while a scenario is read: faults, what is unlikely, defaults in force, files it names.
 
-use super::{BasinTyped, Draft, ObservedTyped, RealizationsTyped, ReportTyped, WarmingTyped, WeatherTyped};
+use super::{
+    BasinTyped, Draft, HypsometryTyped, ObservedTyped, RealizationsTyped, RecordSource, ReportTyped,
+    WarmingTyped, WeatherTyped,
+};
 use crate::fault::{Fault, Unlikely};
 use crate::season::SeasonSettings;
 use crate::snow::SnowParams;
@@ -26,7 +29,9 @@ pub(super) struct Notes {
 }
 
 type Parts = (
+    Option<HypsometryTyped>,
     Option<BasinTyped>,
+    Option<RecordSource>,
     Option<WeatherTyped>,
     Option<SeasonSettings>,
     Option<SnowParams>,
@@ -38,11 +43,24 @@ type Parts = (
 
 impl Notes {
     pub fn into_draft(self, title: Option<String>, seed: u64, parts: Parts) -> Draft {
-        let (basin, weather, season, snow, warming, realizations, report, observed) = parts;
+        let (
+            hypsometry,
+            basin,
+            record_source,
+            weather,
+            season,
+            snow,
+            warming,
+            realizations,
+            report,
+            observed,
+        ) = parts;
         Draft {
             title,
             seed,
+            hypsometry,
             basin,
+            record_source,
             weather,
             season,
             snow,

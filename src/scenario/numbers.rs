@@ -60,7 +60,7 @@ impl Section<'_> {
     ) -> Option<f64> {
         if !self.has(key) {
             self.value(key);
-            self.missing(key, "a number", mend);
+            self.missing(key, "a number", &format!("add it: {mend}"));
             return None;
         }
         self.number_in(key, range, mend)

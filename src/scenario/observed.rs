@@ -1,5 +1,6 @@
 //! `[[observed_swe]]`: sites with observed snow, and how to read their files.
 
+use super::elevation::Height;
 use super::format::{read_date, read_format};
 use super::section::Section;
 use crate::fault::Fault;
@@ -45,8 +46,7 @@ fn read_site(mut section: Section<'_>, names: &mut Vec<String>) -> Option<Observ
     );
     section.names_file(&section.path_of("file"), file.as_deref());
     let name = read_name(&mut section, file.as_deref(), names);
-    let elevation_m =
-        section.required_number("elevation_m", -500.0..=9000.0, "add it, in metres above the sea");
+    let elevation_m = section.required_height(&Height::above_the_sea("elevation_m", "elevation_ft"));
     let date = read_date(section.section("date"));
     let swe = read_swe(section.required_section("swe"));
     let reading = if section.has("reading") {

@@ -1,5 +1,6 @@
 //! `[weather]`: the station's file and how to read it.
 
+use super::elevation::Height;
 use super::format::{read_date, read_format};
 use super::section::Section;
 use crate::fault::Fault;
@@ -9,46 +10,73 @@ use crate::weather::{
     Columns, Gauge, Limits, PrecipitationColumn, Reading, TemperatureColumn, TemperatureColumns,
 };
 
-/// The station's file as typed.
+/// The station's file and how to read it.
 #[derive(Debug, Clone)]
-pub struct WeatherTyped {
+pub struct RecordSource {
     /// The file, relative to the scenario.
     pub file: String,
-    /// Elevation of the station, m.
-    pub station_elevation_m: f64,
     /// Columns, units, marks.
     pub columns: Columns,
-    /// Gauge catch.
-    pub gauge_multiplier: GaugeMultiplier,
     /// Limits of the screening.
     pub limits: Limits,
-    /// The year to which a trend of temperature is taken out of the years that realizations are drawn from.
-    pub detrend_to: Option<i32>,
 }
 
-impl WeatherTyped {
+impl RecordSource {
     /// Whether the file has daily minima and maxima.
     pub fn has_daily_range(&self) -> bool {
         matches!(self.columns.temperature, TemperatureColumns::Extremes { .. })
     }
 }
 
+/// The station as typed.
+#[derive(Debug, Clone)]
+pub struct WeatherTyped {
+    /// Its file.
+    pub source: RecordSource,
+    /// Elevation of the station, m.
+    pub station_elevation_m: f64,
+    /// Gauge catch.
+    pub gauge_multiplier: GaugeMultiplier,
+    /// The year to which a trend of temperature is taken out of the years that realizations are drawn from.
+    pub detrend_to: Option<i32>,
+}
+
 /// A fall of an accumulating gauge beyond this is a reset, mm.
 const RESET_TOLERANCE_MM: f64 = 50.0;
 
-pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
+/// The station's file stands alone too: it can be looked into although another key has a fault.
+pub(super) fn read(mut section: Section<'_>) -> (Option<RecordSource>, Option<WeatherTyped>) {
     let file =
         section.required_text("file", "the path of the station's CSV file", "add file = \"weather.csv\"");
     section.names_file("weather.file", file.as_deref());
     let station_elevation_m =
-        section.required_number("station_elevation_m", -500.0..=9000.0, "add it, in metres above the sea");
+        section.required_height(&Height::above_the_sea("station_elevation_m", "station_elevation_ft"));
     let date = read_date(section.section("date"));
     let temperature = read_temperatures(&mut section);
     let precipitation = read_precipitation(section.required_section("precipitation"));
     let gauge_multiplier = read_multiplier(&mut section);
     let format = read_format(&mut section);
+    let limits = read_limits(&mut section);
+    let detrend_to = section.whole_in("detrend_to", 1700..=2200, 2005).map(|year| year as i32);
+    section.finish();
+    let source = match (file, date, temperature, precipitation, format) {
+        (Some(file), Some(date), Some(temperature), Some(precipitation), Some(format)) => {
+            Some(RecordSource { file, columns: Columns { date, temperature, precipitation, format }, limits })
+        }
+        _ => None,
+    };
+    let typed = match (source.clone(), station_elevation_m, gauge_multiplier) {
+        (Some(source), Some(station_elevation_m), Some(gauge_multiplier)) => {
+            Some(WeatherTyped { source, station_elevation_m, gauge_multiplier, detrend_to })
+        }
+        _ => None,
+    };
+    (source, typed)
+}
+
+fn read_limits(section: &mut Section<'_>) -> Limits {
     let default = Limits::default();
-    let limits = Limits {
+    Limits {
         temperature_gap_days: section.whole_or(
             "temperature_gap_days",
             default.temperature_gap_days as u64,
@@ -74,22 +102,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WeatherTyped> {
             5.0..=200.0,
             "degC from the median of the time of year beyond which a temperature is taken as missing; 25 is common",
         ),
-    };
-    let detrend_to = section.whole_in("detrend_to", 1700..=2200, 2005).map(|year| year as i32);
-    section.finish();
-    Some(WeatherTyped {
-        file: file?,
-        station_elevation_m: station_elevation_m?,
-        columns: Columns {
-            date: date?,
-            temperature: temperature?,
-            precipitation: precipitation?,
-            format: format?,
-        },
-        gauge_multiplier: gauge_multiplier?,
-        limits,
-        detrend_to,
-    })
+    }
 }
 
 fn read_temperatures(section: &mut Section<'_>) -> Option<TemperatureColumns> {

@@ -6,6 +6,9 @@ use csv::StringRecord;
 
 /// How the fault of a column that is not there begins.
 const NO_COLUMN: &str = "no column called ";
+/// What is expected where it is not there, and where several are not.
+const ONE_COLUMN: &str = "a column of this name";
+const SEVERAL_COLUMNS: &str = "columns of these names";
 /// So many column names are listed; the rest are counted.
 const MOST_NAMES: usize = 30;
 /// A header that was not recognised is looked for in so many lines.
@@ -41,77 +44,119 @@ impl Table<'_> {
     }
 
     pub(super) fn no_column(&self, name: &str) -> Fault {
-        let mend = self
-            .with_another_separator(name)
-            .or_else(|| self.nearly(name))
-            .or_else(|| self.farther_down(name))
-            .unwrap_or_else(|| match self.header.len() {
-                1 if self.header_text.contains(" = ") || self.header_text.starts_with('[') => {
-                    "that looks like a line of a scenario: name the data file here".to_owned()
-                }
-                1 => "this line is taken for the header: if it is a remark, set 'comment' to the sign that remarks \
-                      start with, or header_line to the header's line; if it holds all the names, set 'separator'"
-                    .to_owned(),
-                _ => "name one of the columns that stand there, letter for letter".to_owned(),
-            });
-        self.header_fault(0..self.header_text.len(), format!("{NO_COLUMN}'{name}'"), mend)
+        let hint = self.elsewhere(&[name]).or_else(|| self.nearly(name));
+        let mend = hint.or_else(|| self.no_names_here()).unwrap_or_else(|| {
+            format!("name one of the columns that stand there, letter for letter:\n{}", self.names())
+        });
+        self.lacking(format!("{NO_COLUMN}'{name}'"), mend)
+    }
+
+    /// The fault of a column that is called by none of the names it goes by unless the scenario names it; `advice` says how.
+    pub fn no_usual_column(&self, names: &[&str], advice: &str) -> Fault {
+        let hint = self.elsewhere(names).or_else(|| self.no_names_here());
+        let mend = hint.unwrap_or_else(|| format!("{advice}\nThe file's columns are:\n{}", self.names()));
+        self.lacking(format!("{NO_COLUMN}'{}'", names.join("' or '")), mend)
+    }
+
+    fn lacking(&self, found: String, mend: String) -> Fault {
+        let place = self.place(self.header_line, self.header_text, "", 0..0);
+        Fault { place, found, expected: ONE_COLUMN.to_owned(), mend }
+    }
+
+    /// Where one of the names stands instead: between other separators, or on a line below.
+    fn elsewhere(&self, names: &[&str]) -> Option<String> {
+        let is_named = |have: &str| names.contains(&have.trim());
+        self.with_another_separator(is_named).or_else(|| self.farther_down(is_named))
+    }
+
+    /// What a line of one cell is, if it is no header as declared.
+    fn no_names_here(&self) -> Option<String> {
+        if self.header.len() > 1 {
+            return None;
+        }
+        let is_of_scenario = self.header_text.contains(" = ") || self.header_text.starts_with('[');
+        Some(if is_of_scenario {
+            "that looks like a line of a scenario: name the data file here".to_owned()
+        } else if let Some(sign) = self.parting_sign() {
+            another_separator(sign)
+        } else {
+            "this line is taken for the header: if it is a remark, set 'comment' to the sign that remarks start with, or \
+             header_line to the header's line; if it holds all the names, set 'separator'"
+                .to_owned()
+        })
+    }
+
+    /// The separator that parts the header and the line below it into equally many cells, if one does.
+    fn parting_sign(&self) -> Option<&'static str> {
+        let lines_down = self.header_line - self.lines_before;
+        let below = self.text.lines().skip(lines_down).find(|line| !line.trim().is_empty());
+        let count = |line: &str, byte: u8| parts(line, byte, self.format).map_or(0, |cells| cells.len());
+        let fits = |(byte, _): &&(u8, &'static str)| {
+            let names = count(self.header_text, *byte);
+            names > 1 && below.is_none_or(|line| count(line, *byte) == names)
+        };
+        SEPARATORS.iter().find(fits).map(|(_, sign)| *sign)
+    }
+
+    /// The columns' names, one a line.
+    fn names(&self) -> String {
+        let shown = self.header.iter().take(MOST_NAMES).map(|name| format!("  {}", one_line(name)));
+        let more = self.header.len().saturating_sub(MOST_NAMES);
+        let rest = (more > 0).then(|| format!("  and {more} more"));
+        shown.chain(rest).collect::<Vec<_>>().join("\n")
     }
 
     /// The fault of columns that hold the same quantity in several units.
     pub fn beside_each_other(&self, names: &[&str]) -> Fault {
         Fault {
+            place: self.place(self.header_line, self.header_text, "", 0..self.header_text.len()),
+            found: format!("the columns '{}' beside each other", names.join("' and '")),
             expected: "each quantity in one unit".to_owned(),
-            ..self.header_fault(
-                0..self.header_text.len(),
-                format!("the columns '{}' beside each other", names.join("' and '")),
-                "take all but one of them out".to_owned(),
-            )
+            mend: "take all but one of them out".to_owned(),
         }
     }
 
     pub(super) fn repeated_column(&self, name: &str, [_, second]: [usize; 2]) -> Fault {
         let bytes = place::cell_bytes(self.header_text, second, self.format.separator);
-        let found = format!("more than one column called '{name}'");
-        self.header_fault(bytes, found, "rename all but one of them".to_owned())
-    }
-
-    fn header_fault(&self, bytes: std::ops::Range<usize>, found: String, mend: String) -> Fault {
-        let mut names: Vec<&str> = self.header.iter().take(MOST_NAMES).collect();
-        let more = format!("and {} more", self.header.len().saturating_sub(MOST_NAMES));
-        if self.header.len() > MOST_NAMES {
-            names.push(&more);
-        }
         Fault {
             place: self.place(self.header_line, self.header_text, "", bytes),
-            found,
-            expected: format!("one of: {}", names.join(" | ")),
-            mend,
+            found: format!("more than one column called '{name}'"),
+            expected: "each name once".to_owned(),
+            mend: "rename all but one of them".to_owned(),
         }
     }
 
-    fn with_another_separator(&self, name: &str) -> Option<String> {
-        let others = SEPARATORS.iter().filter(|(byte, _)| *byte != self.format.separator);
-        let (_, sign) = others.into_iter().find(|(byte, _)| {
-            parts(self.header_text, *byte, self.format)
-                .is_some_and(|names| names.iter().any(|have| have.trim() == name))
+    fn with_another_separator(&self, is_named: impl Fn(&str) -> bool) -> Option<String> {
+        let mut others = SEPARATORS.iter().filter(|(byte, _)| *byte != self.format.separator);
+        let (_, sign) = others.find(|(byte, _)| {
+            parts(self.header_text, *byte, self.format).is_some_and(|names| names.iter().any(&is_named))
         })?;
-        Some(format!(
-            "the names stand apart by another sign: state separator = \"{sign}\" where the scenario names the file"
-        ))
+        Some(another_separator(sign))
     }
 
-    /// A column whose name differs in capitals or blanks alone.
+    /// A column whose name differs in capitals or blanks alone, or the only one that ends with the name or holds it.
     fn nearly(&self, name: &str) -> Option<String> {
         let plain = |name: &str| name.split_whitespace().collect::<String>().to_lowercase();
-        let near = self.header.iter().find(|have| plain(have) == plain(name))?;
-        Some(format!("did you mean '{near}'? Names are compared letter for letter"))
+        let typed = plain(name);
+        if typed.is_empty() {
+            return None;
+        }
+        let the_only = |fits: &dyn Fn(&str) -> bool| {
+            let mut fitting = self.header.iter().filter(|have| fits(&plain(have)));
+            fitting.next().filter(|_| fitting.next().is_none())
+        };
+        let same = self.header.iter().find(|have| plain(have) == typed);
+        let near = same
+            .or_else(|| the_only(&|have| have.ends_with(&typed)))
+            .or_else(|| the_only(&|have| have.contains(&typed)))?;
+        Some(format!("did you mean '{}'? Names are compared letter for letter", one_line(near)))
     }
 
-    fn farther_down(&self, name: &str) -> Option<String> {
+    fn farther_down(&self, is_named: impl Fn(&str) -> bool) -> Option<String> {
         let mut lines = self.text.lines().enumerate().take(LINES_SEARCHED);
         let (line, _) = lines.find(|(_, line)| {
             parts(line, self.format.separator, self.format)
-                .is_some_and(|names| names.len() > 1 && names.iter().any(|have| have.trim() == name))
+                .is_some_and(|names| names.len() > 1 && names.iter().any(&is_named))
         })?;
         let line = line + 1 + self.lines_before;
         Some(format!(
@@ -119,6 +164,17 @@ impl Table<'_> {
              the remarks above it start with as comment"
         ))
     }
+}
+
+fn another_separator(sign: &str) -> String {
+    format!(
+        "the names stand apart by another sign: state separator = \"{sign}\" where the scenario names the file"
+    )
+}
+
+/// A name without its line breaks, which a cell in quotes may hold.
+fn one_line(name: &str) -> String {
+    name.replace(['\n', '\r'], " ")
 }
 
 /// A line's cells under a separator.
@@ -136,6 +192,9 @@ pub fn joined(faults: Vec<Fault>) -> Vec<Fault> {
             Some(have) => {
                 have.found += ", ";
                 have.found += fault.found.strip_prefix(NO_COLUMN).unwrap_or(&fault.found);
+                if have.expected == ONE_COLUMN {
+                    SEVERAL_COLUMNS.clone_into(&mut have.expected);
+                }
             }
             None => joined.push(fault),
         }

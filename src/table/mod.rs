@@ -4,6 +4,7 @@ mod date;
 mod decode;
 mod format;
 mod header;
+mod number;
 mod place;
 mod runaway;
 mod tally;
@@ -109,6 +110,12 @@ impl<'a> Table<'a> {
         self.header.iter().any(|have| have == name)
     }
 
+    /// The name of the only column whose name holds a word, capitals or not.
+    pub fn the_only_column_with(&self, word: &str) -> Option<&str> {
+        let mut with = self.header.iter().filter(|name| name.to_lowercase().contains(word));
+        with.next().filter(|_| with.next().is_none())
+    }
+
     /// The rows below the header that are not blank, each as it was read or the fault that kept it from being read. Blank
     /// cells beyond the header's, as a separator at the line's end makes them, are let pass.
     pub fn rows(&self) -> impl Iterator<Item = Result<Row<'a>, Fault>> + '_ {
@@ -158,53 +165,6 @@ impl<'a> Table<'a> {
             expected: format!("{cells} cells, as in the header"),
             mend: mend.to_owned(),
         })
-    }
-
-    /// The number in a cell, or none where it holds a mark for 'not measured'.
-    ///
-    /// # Errors
-    /// A cell that holds neither.
-    pub fn number(&self, row: &Row<'_>, column: usize) -> Result<Option<f64>, Fault> {
-        let cell = row.cell(column);
-        if self.format.is_missing(cell) {
-            return Ok(None);
-        }
-        let expected = "a number or a mark for 'not measured'";
-        let mend = self
-            .mend_of_sign(cell)
-            .unwrap_or("if it is such a mark, add it to 'missing' where the scenario names the file");
-        self.format.number(cell).map(Some).ok_or_else(|| self.cell_fault(row, column, expected, mend))
-    }
-
-    /// The number in a cell that must hold one.
-    ///
-    /// # Errors
-    /// A cell that does not.
-    pub fn required_number(&self, row: &Row<'_>, column: usize) -> Result<f64, Fault> {
-        let cell = row.cell(column);
-        let mend = self.mend_of_sign(cell).unwrap_or("fill it in, or take the line out");
-        self.format.number(cell).ok_or_else(|| self.cell_fault(row, column, "a number", mend))
-    }
-
-    /// How to mend a number whose signs are not the declared ones.
-    fn mend_of_sign(&self, cell: &str) -> Option<&'static str> {
-        let swapped = match self.format.decimal {
-            Decimal::Point => Format { decimal: Decimal::Comma, ..Format::default() },
-            Decimal::Comma => Format::default(),
-        };
-        let is_number = |text: &str| swapped.number(text).is_some();
-        match self.format.decimal {
-            _ if cell.contains('.') && cell.contains(',') => {
-                Some("write it without a sign between thousands")
-            }
-            Decimal::Point if is_number(cell) => {
-                Some("if that is a decimal comma, state decimal = \",\" where the scenario names the file")
-            }
-            Decimal::Comma if is_number(cell) => {
-                Some("if that is a decimal point, take decimal = \",\" out where the scenario names the file")
-            }
-            _ => None,
-        }
     }
 
     /// A fault in one cell.

@@ -40,13 +40,12 @@ impl Tally {
         self.faults.is_empty()
     }
 
-    /// Says in every fault of a column how to mend it, once the whole file is known.
-    pub fn mend(&mut self, column: &str, mend: &str) {
-        for fault in
-            self.faults.iter_mut().filter(|fault| fault.mend.is_empty() && column_of(fault) == column)
-        {
-            mend.clone_into(&mut fault.mend);
-        }
+    /// Lets `say` tell of every fault of a column how to mend it, once the whole file is known.
+    pub fn mend(&mut self, column: &str, say: impl FnMut(&mut Fault)) {
+        self.faults
+            .iter_mut()
+            .filter(|fault| fault.mend.is_empty() && column_of(fault) == column)
+            .for_each(say);
     }
 
     /// All faults, with a word on those that were only counted.

@@ -1,6 +1,6 @@
 //! Cells to numbers: a station's file as consecutive days in degC and mm, and every cell that cannot be read.
 
-use super::columns::{Columns, Gauge, TemperatureColumns};
+use super::columns::{Columns, Gauge, TemperatureColumn, TemperatureColumns};
 use crate::calendar::days_between;
 use crate::fault::Fault;
 use crate::table::{DateReader, Row, Table, Tally, joined};
@@ -37,12 +37,20 @@ struct Measured {
     gauge_mm: Option<f64>,
 }
 
-/// Where the quantities stand.
+/// Where the quantities stand; none where a column is not there.
 struct Places {
-    tmin: usize,
-    /// None where the file has the mean alone.
+    /// The minimum, or the mean alone.
+    tmin: Option<usize>,
+    /// None also where the file has the mean alone.
     tmax: Option<usize>,
-    gauge: usize,
+    gauge: Option<usize>,
+}
+
+/// The columns that are there, and the faults of those that are not.
+struct Found<'c> {
+    dates: Option<DateReader<'c>>,
+    places: Places,
+    faults: Vec<Fault>,
 }
 
 /// Reads the cells of `text`. `file` names the file in faults.
@@ -54,7 +62,7 @@ struct Places {
 /// infinities, daily precipitation below 0, dates that cannot be read, repeat or run to and fro, no rows.
 pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<RawDays, Vec<Fault>> {
     let table = Table::open(file, text, &columns.format).map_err(|fault| vec![fault])?;
-    let (mut dates, places) = find(&table, columns)?;
+    let Found { mut dates, places, faults } = find(&table, columns)?;
     let mut tally = Tally::default();
     let mut lines: Vec<Line> = Vec::new();
     for (number, row) in table.rows().enumerate() {
@@ -67,17 +75,19 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
             break;
         }
         let Some(row) = tally.keep(row) else { continue };
-        let date = dates.read(&table, &row, &mut tally);
+        let date = dates.as_mut().and_then(|dates| dates.read(&table, &row, &mut tally));
         let measured = read_row(&table, &row, columns, &places, &mut tally);
         lines.extend(date.map(|date| Line { date, number: row.line, measured }));
     }
-    dates.finish(&table, &mut tally);
+    let sound_dates = dates.filter(|dates| dates.finish(&table, &mut tally));
     if lines.first().map(|line| line.date) > lines.last().map(|line| line.date) {
         lines.reverse();
     }
-    complain_of_order(&table, &dates, &out_of_order(&lines), &mut tally);
-    if !tally.is_empty() {
-        return Err(tally.into_faults());
+    if let Some(dates) = sound_dates {
+        complain_of_order(&table, &dates, &out_of_order(&lines), &mut tally);
+    }
+    if !faults.is_empty() || !tally.is_empty() {
+        return Err(faults.into_iter().chain(tally.into_faults()).collect());
     }
     match lines.first() {
         Some(first) => Ok(in_order(first.date, &lines)),
@@ -89,31 +99,34 @@ pub(super) fn read_days(file: &str, text: &str, columns: &Columns) -> Result<Raw
     }
 }
 
-fn find<'c>(table: &Table<'_>, columns: &'c Columns) -> Result<(DateReader<'c>, Places), Vec<Fault>> {
-    let dates = DateReader::new(table, &columns.date);
-    let temperatures = columns.temperature.named();
-    let found: Vec<Result<usize, Fault>> =
-        temperatures.iter().map(|(_, temperature)| table.column(&temperature.column)).collect();
-    let gauge = table.column(&columns.precipitation.column);
-    let (dates, temperatures, gauge) =
-        match (dates, found.iter().cloned().collect::<Result<Vec<_>, _>>(), gauge) {
-            (Ok(dates), Ok(temperatures), Ok(gauge)) => (dates, temperatures, gauge),
-            (dates, _, gauge) => {
-                let of_dates = dates.err().into_iter().flatten();
-                let all = of_dates.chain(found.into_iter().filter_map(Result::err)).chain(gauge.err());
-                return Err(joined(all.collect()));
-            }
-        };
-    let mut used = [dates.columns(), &temperatures, &[gauge]].concat();
+/// Looks for the columns.
+///
+/// # Errors
+/// None of them is there, so that it is most likely another table; or one is named for two quantities.
+fn find<'c>(table: &Table<'_>, columns: &'c Columns) -> Result<Found<'c>, Vec<Fault>> {
+    let mut faults = Vec::new();
+    let dates = DateReader::new(table, &columns.date).map_err(|missing| faults.extend(missing)).ok();
+    let mut place = |name: &str| table.column(name).map_err(|missing| faults.push(missing)).ok();
+    let temperatures: Vec<Option<usize>> =
+        columns.temperature.named().iter().map(|(_, temperature)| place(&temperature.column)).collect();
+    let gauge = place(&columns.precipitation.column);
+    let numbers: Vec<usize> = temperatures.iter().copied().flatten().chain(gauge).collect();
+    let faults = joined(faults);
+    if dates.is_none() && numbers.is_empty() {
+        return Err(faults);
+    }
+    let mut used = [dates.as_ref().map_or(&[][..], DateReader::columns), &numbers].concat();
     used.sort_unstable();
     if used.windows(2).any(|pair| pair[0] == pair[1]) {
-        return Err(vec![table.file_fault(
+        let twice = table.file_fault(
             "one column named for two quantities",
             "a column of its own for the date, each temperature and precipitation",
             "name the columns in [weather]; a file with the daily mean alone has tmean and no tmin and tmax",
-        )]);
+        );
+        return Err(faults.into_iter().chain([twice]).collect());
     }
-    Ok((dates, Places { tmin: temperatures[0], tmax: temperatures.get(1).copied(), gauge }))
+    let [tmin, tmax] = [0, 1].map(|at| temperatures.get(at).copied().flatten());
+    Ok(Found { dates, places: Places { tmin, tmax, gauge }, faults })
 }
 
 fn read_row(
@@ -123,21 +136,29 @@ fn read_row(
     places: &Places,
     tally: &mut Tally,
 ) -> Measured {
-    let (tmin, tmax) = match &columns.temperature {
-        TemperatureColumns::Extremes { tmin, tmax } => (tmin, tmax),
-        TemperatureColumns::MeanAlone(mean) => (mean, mean),
-    };
     let precipitation = &columns.precipitation;
     let mut cell = |at: usize| tally.keep(table.number(row, at)).flatten();
-    let tmin_c = cell(places.tmin).map(|value| tmin.unit.to_celsius(value));
-    let tmax_c = places.tmax.map_or(tmin_c, |at| cell(at).map(|value| tmax.unit.to_celsius(value)));
-    let is_trace = precipitation.trace.iter().any(|mark| mark == row.cell(places.gauge));
-    let gauge = if is_trace { Some(0.0) } else { cell(places.gauge) };
+    let mut celsius = |at: Option<usize>, column: &TemperatureColumn| {
+        at.and_then(&mut cell).map(|value| column.unit.to_celsius(value))
+    };
+    let [tmin_c, tmax_c] = match &columns.temperature {
+        TemperatureColumns::Extremes { tmin, tmax } => {
+            [celsius(places.tmin, tmin), celsius(places.tmax, tmax)]
+        }
+        TemperatureColumns::MeanAlone(mean) => [celsius(places.tmin, mean); 2],
+    };
+    let gauge = places.gauge.and_then(|at| {
+        let is_trace = precipitation.trace.iter().any(|mark| mark == row.cell(at));
+        if is_trace { Some(0.0) } else { cell(at) }
+    });
     let gauge_mm = gauge.map(|value| precipitation.unit.to_millimetres(value));
-    if precipitation.gauge == Gauge::Daily && gauge_mm.is_some_and(|amount| amount < 0.0) {
+    if let Some(at) = places.gauge
+        && precipitation.gauge == Gauge::Daily
+        && gauge_mm.is_some_and(|amount| amount < 0.0)
+    {
         tally.push(table.cell_fault(
             row,
-            places.gauge,
+            at,
             "a daily amount of 0 or more",
             "if the gauge accumulates, say so with gauge = \"accumulating\"; else add the mark to 'missing'",
         ));

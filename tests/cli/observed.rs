@@ -230,7 +230,7 @@ error: observed_swe[0].elevation_m: no 'elevation_m'
 24 | [[observed_swe]]
    | ^^^^^^^^^^^^^^^^ expected a number
    |
-   = help: add it, in metres above the sea
+   = help: add it, in metres above the sea; or elevation_ft, in feet
 
 error: 'observed_swe[0].elevation', which is not a key of a scenario
   --> scenario.toml:27:1

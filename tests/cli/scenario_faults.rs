@@ -21,7 +21,7 @@ error: basin.latitude_deg: no 'latitude_deg'
 4 | [basin]
   |  ^^^^^ expected a number
   |
-  = help: degrees, negative in the southern hemisphere
+  = help: add it: degrees, negative in the southern hemisphere
 
 error: 'basin.latitud_deg', which is not a key of a scenario
  --> scenario.toml:5:1

@@ -109,16 +109,21 @@ error: no column called 'lower_m' or 'lower_ft', 'upper_m' or 'upper_ft', 'area_
  --> bands.csv:1:1
   |
 1 | from,to,area
-  | ^^^^^^^^^^^^ expected one of: from | to | area
+  | ^ expected columns of these names
   |
-  = help: name one of the columns that stand there, letter for letter
+  = help: if the file has other names, name them:
+            bands = { file = "...", lower = { column = "...", unit = "m" }, upper = { column = "...", unit = "m" }, area = { column = "area", unit = "km2" } }
+          The file's columns are:
+            from
+            to
+            area
 
 ## semicolons
 error: no column called 'lower_m' or 'lower_ft', 'upper_m' or 'upper_ft', 'area_km2' or 'area_mi2' or 'area_ha' or 'area_acre'
  --> bands.csv:1:1
   |
 1 | lower_m;upper_m;area_km2
-  | ^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: lower_m;upper_m;area_km2
+  | ^ expected columns of these names
   |
   = help: the names stand apart by another sign: state separator = ";" where the scenario names the file
 

@@ -1,7 +1,7 @@
 //! Dates that are wrong, mixed, repeated, missing, out of order or few.
 
 use super::super::basin::weather;
-use super::{accepted_files, refused_files, rows, small};
+use super::{accepted, accepted_files, refused, refused_files, rows, small};
 
 /// A date in another form.
 fn written(date: &str, form: &str) -> String {
@@ -216,6 +216,51 @@ error: date: ''
   |
   = help: fill the date in, or take the line out
 "#);
+}
+
+/// A form that does not fit a sound file is what is wrong, not the calendar: the form that reads the whole file is named,
+/// and followed to the letter it is the right one.
+#[test]
+fn a_wrong_form_with_a_sound_file() {
+    let cases = [
+        ("%m/%d/%Y", "%Y-%m-%d"),
+        ("%m-%d-%Y", "%Y-%m-%d"),
+        ("%Y-%d-%m", "%Y-%m-%d"),
+        ("%d/%m/%Y", "%m/%d/%Y"),
+        ("%m/%d/%Y", "%d/%m/%Y"),
+    ];
+    for (stated, true_form) in cases {
+        let basin = small();
+        basin.write_bytes("weather.csv", with_dates(|_, date| written(date, true_form)));
+        let place = "station_elevation_m = 2000\n";
+        let stating = |form: &str| format!("{place}date = {{ format = \"{form}\" }}\n");
+        basin.exchange(place, &stating(stated));
+        let said = refused(&basin);
+        let advice = format!("if the file writes dates so, state format = \"{true_form}\" in date\n");
+        assert_eq!(said.matches(&advice).count(), 3, "{stated} on {true_form}: {said}");
+        assert!(!said.contains("calendar") && !said.contains("a date after"), "{said}");
+        basin.exchange(&stating(stated), &stating(true_form));
+        accepted(&basin);
+    }
+}
+
+/// Of many days in a form that reads them, one that no year has.
+#[test]
+fn a_day_that_the_calendar_lacks() {
+    for form in ["%Y-%m-%d", "%m/%d/%Y"] {
+        let basin = small();
+        let place = "station_elevation_m = 2000\n";
+        basin.exchange(place, &format!("{place}date = {{ format = \"{form}\" }}\n"));
+        let gone = written("2003-03-01", form);
+        let text = with_dates(|_, date| written(date, form));
+        let never = form.replace("%Y", "2003").replace("%m", "02").replace("%d", "29");
+        basin.write_bytes("weather.csv", text.replace(&gone, &never));
+        let said = refused(&basin);
+        assert!(
+            said.contains(&format!("'{never}'")) && said.contains("expected a day that the calendar has")
+        );
+        assert!(said.contains("help: mend the date, or take the line out"), "{said}");
+    }
 }
 
 #[test]

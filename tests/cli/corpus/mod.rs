@@ -2,7 +2,10 @@
 
 mod advice;
 mod bands;
+mod columns;
 mod dates;
+mod faults_at_once;
+mod feet;
 mod mutations;
 mod scenarios;
 mod tables;

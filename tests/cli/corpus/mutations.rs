@@ -59,7 +59,7 @@ fn read_all(scenario: &[u8], bands: &[u8], record: &[u8]) {
         if let Ok(bands) = text(bands) {
             faults.extend(read_bands("bands.csv", &bands, &BandColumns::default()).err().unwrap_or_default());
         }
-        if let (Some(typed), Some(season), Ok(record)) = (&draft.weather, &draft.season, text(record)) {
+        if let (Some(typed), Some(season), Ok(record)) = (&draft.record_source, &draft.season, text(record)) {
             let (start, survey) = (season.water_year_starts, season.survey_dates[0]);
             match thawline::weather::read(
                 "weather.csv",

@@ -126,7 +126,7 @@ error: no column called 'date', 'tmin_c', 'tmax_c', 'precip_mm'
  --> Höhe "A" d'été.csv:1:1
   |
 1 | date;tmin_c;tmax_c;precip_mm
-  | ^^^^^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: date;tmin_c;tmax_c;precip_mm
+  | ^ expected columns of these names
   |
   = help: the names stand apart by another sign: state separator = ";" where the scenario names the file
 "#);
@@ -182,7 +182,7 @@ error: weather.station_elevation_m: no 'station_elevation_m'
 10 | [weather]
    |  ^^^^^^^ expected a number
    |
-   = help: add it, in metres above the sea
+   = help: add it, in metres above the sea; or station_elevation_ft, in feet
 
 error: 'weather.station_elevation', which is not a key of a scenario
   --> scenario.toml:12:1
@@ -445,9 +445,14 @@ error: no column called 'elevation_m' or 'elevation_ft', 'area_below_km2' or 'ar
  --> bands.csv:1:1
   |
 1 | lower_m,upper_m,area_km2
-  | ^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: lower_m | upper_m | area_km2
+  | ^ expected columns of these names
   |
-  = help: name one of the columns that stand there, letter for letter
+  = help: if the file has other names, name them:
+            area_elevation_curve = { file = "...", elevation = { column = "...", unit = "m" }, area_below = { column = "area_km2", unit = "km2" } }
+          The file's columns are:
+            lower_m
+            upper_m
+            area_km2
 
 2 faults; nothing was run
 
@@ -465,7 +470,7 @@ error: warming.global.already_in_record_global_c: no 'already_in_record_global_c
 19 | global = { levels_c = [0, 2], local_per_global = 1.3 }
    | ^^^^^^ expected a number
    |
-   = help: global warming above 1850-1900 that the record already holds, at its mid-year: 1.09 for 2011-2020 (IPCC AR6)
+   = help: add it: global warming above 1850-1900 that the record already holds, at its mid-year: 1.09 for 2011-2020 (IPCC AR6)
 
 2 faults; nothing was run
 

@@ -71,7 +71,7 @@ error: no column called 'date', 'tmin_c', 'tmax_c', 'precip_mm'
  --> weather.csv:1:1
   |
 1 | title = "Test fork"
-  | ^^^^^^^^^^^^^^^^^^^ expected one of: title = "Test fork"
+  | ^ expected columns of these names
   |
   = help: that looks like a line of a scenario: name the data file here
 
@@ -168,7 +168,7 @@ error: no column called 'date', 'tmin_c', 'tmax_c', 'precip_mm'
  --> weather.csv:1:1
   |
 1 | date;tmin_c;tmax_c;precip_mm
-  | ^^^^^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: date;tmin_c;tmax_c;precip_mm
+  | ^ expected columns of these names
   |
   = help: the names stand apart by another sign: state separator = ";" where the scenario names the file
 
@@ -177,7 +177,7 @@ error: no column called 'date', 'tmin_c', 'tmax_c', 'precip_mm'
  --> weather.csv:1:1
   |
 1 | date    tmin_c    tmax_c    precip_mm
-  | ^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: date\ttmin_c\ttmax_c\tprecip_mm
+  | ^ expected columns of these names
   |
   = help: the names stand apart by another sign: state separator = "\t" where the scenario names the file
 
@@ -213,7 +213,7 @@ error: no column called 'date', 'tmin_c', 'tmax_c', 'precip_mm'
  --> weather.csv:1:1
   |
 1 | date;tmin_c;tmax_c;precip_mm
-  | ^^^^^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: date;tmin_c;tmax_c;precip_mm
+  | ^ expected columns of these names
   |
   = help: the names stand apart by another sign: state separator = ";" where the scenario names the file
 "#);
@@ -238,7 +238,7 @@ error: no column called 'date', 'tmin_c', 'tmax_c', 'precip_mm'
  --> weather.csv:1:1
   |
 1 | Station 7 of the north side
-  | ^^^^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: Station 7 of the north side
+  | ^ expected columns of these names
   |
   = help: that name stands on line 3: state header_line = 3 where the scenario names the file, or the sign that the remarks above it start with as comment
 
@@ -256,7 +256,7 @@ error: no column called 'tmin_c'
  --> weather.csv:1:1
   |
 1 | date,TMIN_C,Tmax_c,precip_mm
-  | ^^^^^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: date | TMIN_C | Tmax_c | precip_mm
+  | ^ expected a column of this name
   |
   = help: did you mean 'TMIN_C'? Names are compared letter for letter
 
@@ -264,7 +264,7 @@ error: no column called 'tmax_c'
  --> weather.csv:1:1
   |
 1 | date,TMIN_C,Tmax_c,precip_mm
-  | ^^^^^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: date | TMIN_C | Tmax_c | precip_mm
+  | ^ expected a column of this name
   |
   = help: did you mean 'Tmax_c'? Names are compared letter for letter
 
@@ -275,15 +275,19 @@ error: no column called 'tmax_c'
  --> weather.csv:1:1
   |
 1 | date,tmin_c,tmin_c,precip_mm
-  | ^^^^^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: date | tmin_c | tmin_c | precip_mm
+  | ^ expected a column of this name
   |
-  = help: name one of the columns that stand there, letter for letter
+  = help: name one of the columns that stand there, letter for letter:
+            date
+            tmin_c
+            tmin_c
+            precip_mm
 
 error: more than one column called 'tmin_c'
  --> weather.csv:1:13
   |
 1 | date,tmin_c,tmin_c,precip_mm
-  |             ^^^^^^ expected one of: date | tmin_c | tmin_c | precip_mm
+  |             ^^^^^^ expected each name once
   |
   = help: rename all but one of them
 
@@ -294,9 +298,13 @@ error: no column called 'tmin_c'
  --> weather.csv:1:1
   |
 1 | date,tmin␛[31m_c,tmax_c,precip_mm
-  | ^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: date | tmin�[31m_c | tmax_c | precip_mm
+  | ^ expected a column of this name
   |
-  = help: name one of the columns that stand there, letter for letter
+  = help: name one of the columns that stand there, letter for letter:
+            date
+            tmin�[31m_c
+            tmax_c
+            precip_mm
 ");
 }
 

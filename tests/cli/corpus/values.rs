@@ -131,3 +131,49 @@ second look: weather.file: only 3 water years are in use: the spread of realizat
 second look: weather.precipitation: 1095 days with an amount, all of them 0; the first on 2000-10-01 (line 2): 0.0 mm. Is it the right column?
 ");
 }
+
+/// What groups of three may be is said both ways, and what else a sign can be in one way.
+#[test]
+fn signs_between_thousands() {
+    let with_point = ["8,500", "8,5", "1,234,567", "1,234.5"]
+        .map(|cell| (cell, weather(3).replacen(",6.0\n", &format!(",\"{cell}\"\n"), 1)));
+    let basin = super::small();
+    let mut said: Vec<String> = Vec::new();
+    for (cell, text) in with_point {
+        basin.write("weather.csv", &text);
+        said.push(super::refused(&basin));
+        assert!(said.last().is_some_and(|last| last.contains(cell)));
+    }
+    basin.exchange(
+        "station_elevation_m = 2000",
+        "station_elevation_m = 2000\nseparator = \";\"\ndecimal = \",\"",
+    );
+    for cell in ["8.500", "8.5", "1.234.567", "1.234,5"] {
+        let text =
+            weather(3).replace(',', ";").replace('.', ",").replacen(";6,0\n", &format!(";{cell}\n"), 1);
+        basin.write("weather.csv", &text);
+        said.push(super::refused(&basin));
+    }
+    let helps = said
+        .iter()
+        .flat_map(|said| said.lines())
+        .filter(|line| line.contains(": '") || line.contains("help:"));
+    insta::assert_snapshot!(helps.collect::<Vec<_>>().join("\n"), @r#"
+error: precip_mm: '8,500'
+  = help: if the comma parts thousands, write 8500; if it is a decimal comma, state decimal = "," where the scenario names the file
+error: precip_mm: '8,5'
+  = help: if that is a decimal comma, state decimal = "," where the scenario names the file
+error: precip_mm: '1,234,567'
+  = help: write it without a sign between thousands: 1234567
+error: precip_mm: '1,234.5'
+  = help: write it without a sign between thousands
+error: precip_mm: '8.500'
+  = help: if the point parts thousands, write 8500; if it is a decimal point, take decimal = "," out where the scenario names the file
+error: precip_mm: '8.5'
+  = help: if that is a decimal point, take decimal = "," out where the scenario names the file
+error: precip_mm: '1.234.567'
+  = help: write it without a sign between thousands: 1234567
+error: precip_mm: '1.234,5'
+  = help: write it without a sign between thousands
+"#);
+}
