@@ -10,8 +10,10 @@ use std::ops::RangeInclusive;
 
 /// A year's highest SWE over its precipitation is hardly outside this where snow is measured (common practice).
 const HARDLY_OUTSIDE: RangeInclusive<f64> = 0.08..=2.0;
-/// And mostly within this.
+/// And mostly within this,
 const USUAL: RangeInclusive<f64> = 0.1..=1.5;
+/// about here.
+const MIDDLE: f64 = 0.5;
 
 impl Observations {
     /// What to say where the readings would be likely in another unit and are not in `unit`, the declared one. `key` is the
@@ -24,8 +26,11 @@ impl Observations {
         }
         let in_unit = |other: DepthUnit| highest_mm / unit.to_millimetres(1.0) * other.to_millimetres(1.0);
         let others = DepthUnit::NAMES.iter().filter(|(_, other)| *other != unit);
-        let (name, other) =
-            others.into_iter().find(|(_, other)| USUAL.contains(&(in_unit(*other) / precipitation_mm)))?;
+        let ratio = |other: DepthUnit| in_unit(other) / precipitation_mm;
+        let from_middle = |other: DepthUnit| libm::log(ratio(other) / MIDDLE).abs();
+        let (name, other) = others
+            .filter(|(_, other)| USUAL.contains(&ratio(*other)))
+            .min_by(|(_, a), (_, b)| from_middle(*a).total_cmp(&from_middle(*b)))?;
         Some(Unlikely::new(
             format!("{key}.swe.unit"),
             format!(

@@ -38,6 +38,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
 /// Shapes of minima and maxima: one for both, or of their own.
 fn read_shapes(section: &mut Section<'_>) -> [[f64; 12]; 2] {
     const EVEN: [f64; 12] = [1.0; 12];
+    const TYPED: &str = "[1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 1]";
     let both = shape(section, "monthly_shape");
     let own = ["tmin_monthly_shape", "tmax_monthly_shape"].map(|key| shape(section, key));
     if both.is_some() && own.iter().all(Option::is_some) {
@@ -50,9 +51,9 @@ fn read_shapes(section: &mut Section<'_>) -> [[f64; 12]; 2] {
     }
     if both.is_none() && !section.has("monthly_shape") {
         match own {
-            [None, None] => section.default("monthly_shape", format!("{EVEN:?}")),
-            [None, Some(_)] => section.default("tmin_monthly_shape", format!("{EVEN:?}")),
-            [Some(_), None] => section.default("tmax_monthly_shape", format!("{EVEN:?}")),
+            [None, None] => section.default("monthly_shape", TYPED),
+            [None, Some(_)] => section.default("tmin_monthly_shape", TYPED),
+            [Some(_), None] => section.default("tmax_monthly_shape", TYPED),
             [Some(_), Some(_)] => {}
         }
     }

@@ -311,3 +311,25 @@ fn slips_in_the_table_of_a_site() {
     let ended = basin.run("check scenario.toml");
     assert!(ended.status == 3 && ended.stderr.contains("no reading"), "{}", ended.stderr);
 }
+
+/// Inches declared as mm: snow of a few millimetres where the year has hundreds of precipitation.
+#[test]
+fn a_unit_that_cannot_be_is_said_with_the_one_that_may_be() {
+    let basin = Basin::new();
+    let readings: String = (0..120)
+        .map(|day| {
+            let date = chrono::NaiveDate::from_ymd_opt(2001, 1, 1).unwrap() + chrono::Days::new(day);
+            format!("{date},{:.1}\n", 2.0 + day as f64 / 12.0)
+        })
+        .collect();
+    basin.write("snow.csv", &format!("date,swe\n{readings}"));
+    let site = "\n[[observed_swe]]\nfile = \"snow.csv\"\nelevation_m = 2000\nswe = { column = \"swe\", unit = \"mm\" }\n";
+    basin.exchange("years = 5\n", &format!("years = 5\n{site}"));
+    let checked = |basin: &Basin| {
+        basin.run("check scenario.toml").stdout.split_whitespace().collect::<Vec<_>>().join(" ")
+    };
+    let said = checked(&basin);
+    assert!(said.contains("observed_swe[0].swe.unit") && said.contains("read as in they would be"), "{said}");
+    basin.exchange("column = \"swe\", unit = \"mm\"", "column = \"swe\", unit = \"in\"");
+    assert!(!checked(&basin).contains("swe.unit"));
+}
