@@ -318,7 +318,7 @@ fn a_unit_that_cannot_be_is_said_with_the_one_that_may_be() {
     let basin = Basin::new();
     let readings: String = (0..120)
         .map(|day| {
-            let date = chrono::NaiveDate::from_ymd_opt(2001, 1, 1).unwrap() + chrono::Days::new(day);
+            let date = NaiveDate::from_ymd_opt(2001, 1, 1).unwrap() + Days::new(day);
             format!("{date},{:.1}\n", 2.0 + day as f64 / 12.0)
         })
         .collect();
