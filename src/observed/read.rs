@@ -141,6 +141,7 @@ fn sift(lines: &mut [Line]) -> Vec<Suspicion> {
             what: what.to_owned(),
             count: among.len(),
             is_taken_as_missing,
+            is_as_asked: false,
             first: FirstPlace {
                 date: first.date,
                 line: Some(first.number),

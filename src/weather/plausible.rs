@@ -75,7 +75,12 @@ impl Record {
                 format!("{} is the coldest month: is the sign of the latitude right?", MONTHS[coldest]),
             );
         }
-        found.extend(self.suspicions.iter().map(|it| Unlikely::new(it.about, it.to_string())));
+        found.extend(
+            self.suspicions
+                .iter()
+                .filter(|it| !it.is_as_asked)
+                .map(|it| Unlikely::new(it.about, it.to_string())),
+        );
         found
     }
 }

@@ -184,7 +184,9 @@ fn far_from_median(
     let what =
         |limit_c: f64| format!("values more than {limit_c} degC from the median of their time of year");
     if let Some(limit_c) = limit_c {
-        return finder.drop(key, what(limit_c), column, "degC", |day, value| departure(day, value) > limit_c);
+        let is_far = |day: usize, value: f64| departure(day, value) > limit_c;
+        let dropped = finder.drop(key, what(limit_c), column, "degC", is_far);
+        return Suspicion::as_asked(finder, dropped);
     }
     let mend = format!(
         "A failing sensor? temperature_departure_c = {FAR_FROM_MEDIAN_C} in [weather] takes them as missing"
@@ -215,7 +217,8 @@ fn stuck(
     let what = |days: usize| format!("values in runs of {days} or more days on which it did not change");
     if let Some(days) = limit_days {
         let stuck = in_long_runs(column, days);
-        return finder.drop(key, what(days), column, "degC", |day, _| stuck[day]);
+        let dropped = finder.drop(key, what(days), column, "degC", |day, _| stuck[day]);
+        return Suspicion::as_asked(finder, dropped);
     }
     let mut measured = column.iter().flatten();
     let first = measured.next();

@@ -16,6 +16,8 @@ pub struct Suspicion {
     pub count: usize,
     /// Whether they were taken as missing.
     pub is_taken_as_missing: bool,
+    /// Whether a setting asked for that; then it needs no second look.
+    pub is_as_asked: bool,
     /// The first.
     pub first: FirstPlace,
     /// What may be done about it; empty where nothing need be.
@@ -81,6 +83,7 @@ impl Finder {
                 what: what.into(),
                 count: 1 + days.count(),
                 is_taken_as_missing: false,
+                is_as_asked: false,
                 first: FirstPlace { date: date_of(self.first_day, first + 1), line, value },
                 mend: mend.into(),
             });
@@ -107,6 +110,16 @@ impl Finder {
             new.is_taken_as_missing = true;
             new.count
         })
+    }
+}
+
+impl Suspicion {
+    /// Marks the newest of what was found as asked for by a setting, if `count` says that there is one.
+    pub(super) fn as_asked(finder: &mut Finder, count: usize) -> usize {
+        if let Some(newest) = finder.found.last_mut().filter(|_| count > 0) {
+            newest.is_as_asked = true;
+        }
+        count
     }
 }
 

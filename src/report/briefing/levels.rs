@@ -11,6 +11,14 @@ use maud::{Markup, html};
 /// The section.
 pub(super) fn section(study: &Study<'_>) -> Markup {
     let (findings, reader) = (study.findings, study.reader);
+    let levels = findings.levels_c.iter().enumerate();
+    let names: Vec<String> = levels
+        .map(
+            |(at, level_c)| {
+                if at == findings.reference { "reference".to_owned() } else { reader.level(*level_c) }
+            },
+        )
+        .collect();
     html! {
         h2 { "Level by level" }
         div.scroll {
@@ -19,7 +27,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
                     "-year values; below it the median paired change from the reference, and how many times its half spread that is." }
                 thead { tr {
                     th scope="col" { "Measure" }
-                    @for level_c in &findings.levels_c { th scope="col" { (reader.level(*level_c)) } }
+                    @for name in &names { th scope="col" { (name) } }
                 } }
                 tbody { @for measure in &findings.basin { tr {
                     th scope="row" { (measure.measure.title) }
@@ -38,7 +46,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
                     thead { tr {
                         th scope="col" { "Band, " (reader.units.elevation().word) }
                         th scope="col" { "Area, " (reader.units.area().word) }
-                        @for level_c in &findings.levels_c { th scope="col" { (reader.level(*level_c)) } }
+                        @for name in &names { th scope="col" { (name) } }
                     } }
                     tbody { @for band in findings.bands.iter().rev() { @if let Some(measure) = band.measures.first() { tr {
                         th scope="row" { (reader.elevation_bare(band.band.lower_m)) " – " (reader.elevation_bare(band.band.upper_m)) }
