@@ -248,3 +248,105 @@ fn another_agencys_file_is_the_same_record() {
     assert_eq!(ended.status, 0, "{}", ended.stderr);
     assert_eq!(ended.stdout, plain);
 }
+
+/// Words of `check`, on one line.
+fn checked(basin: &Basin, flags: &str) -> String {
+    let ended = basin.run(&format!("check scenario.toml {flags}"));
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    ended.stdout.split_whitespace().collect::<Vec<_>>().join(" ")
+}
+
+/// What a setting has settled needs no second look, and a year that the user leaves out is named.
+#[test]
+fn years_and_values_that_the_user_takes_out() {
+    let basin = Basin::new();
+    let sound = weather(6);
+    let (_, after) = sound.split_once("2003-01-15,").unwrap();
+    let low = after.split(',').next().unwrap();
+    basin.write("weather.csv", &sound.replace(&format!("2003-01-15,{low}"), "2003-01-15,-51.0"));
+    assert!(checked(&basin, "").contains("from the median of their time of year; the first on 2003-01-15"));
+    basin.exchange(
+        "station_elevation_m = 2000",
+        "station_elevation_m = 2000\ntemperature_departure_c = 25\nleave_out_water_years = [2002]",
+    );
+    let said = checked(&basin, "");
+    assert!(
+        said.contains("left out 2002: as the scenario asks") && said.contains("5 of 6, from 2001"),
+        "{said}"
+    );
+    assert!(!said.contains("median of their time of year"), "{said}");
+    basin.exchange("[2002]", "[2002.5]");
+    assert!(
+        basin
+            .run("check scenario.toml")
+            .stderr
+            .contains("water years, each named for the year in which it ends")
+    );
+}
+
+/// Changes that even out over the months are none of 'the same'; shapes are said, and one too many is a fault.
+#[test]
+fn what_levels_do_by_month_is_said() {
+    let basin = Basin::new();
+    assert!(checked(&basin, "").contains("precipitation the same at every level"));
+    let months = |value: &str| format!("[{}]", [value, "-50"].repeat(6).join(", "));
+    basin.exchange(
+        "levels_c = [0, 2]",
+        &format!("levels_c = [0, 2]\nprecipitation_change_pct = {}", months("50")),
+    );
+    assert!(checked(&basin, "").contains("−50.0 to +50.0 % at +2 °C"));
+    let two = format!("[{}]", ["2"; 12].join(", "));
+    basin.exchange("levels_c = [0, 2]", &format!("levels_c = [0, 2]\ntmin_monthly_shape = {two}"));
+    let said = checked(&basin, "");
+    // Minima warm by 2 and maxima by 1 for each degree of the level: the mean by 1.5.
+    assert!(said.contains("averages 1.500") && said.contains("warming.tmax_monthly_shape = [1, 1"), "{said}");
+    basin.exchange(
+        "tmin_monthly",
+        &format!("monthly_shape = {two}\ntmax_monthly_shape = {two}\ntmin_monthly"),
+    );
+    assert!(
+        basin.run("check scenario.toml").stderr.contains("monthly_shape beside those of minima and maxima")
+    );
+}
+
+/// A seed on the command line leaves no default in force; a global level may not become an absurd one of the basin's own;
+/// a water year that cuts the usual window has none.
+#[test]
+fn defaults_and_ranges_that_hang_on_other_keys() {
+    let basin = Basin::new();
+    basin.exchange("seed = 5\n", "");
+    assert!(
+        checked(&basin, "").contains(" seed = 1 ") && !checked(&basin, "--seed 7").contains(" seed = 1 ")
+    );
+    basin.exchange("years = 5\n", "years = 5\n[season]\nwater_year_starts = \"07-01\"\n");
+    assert!(checked(&basin, "").contains("season.volume_windows = []"));
+    let global = "global = { levels_c = [15], local_per_global = 5, already_in_record_global_c = -1 }";
+    basin.exchange("levels_c = [0, 2]", global);
+    let refused = basin.run("check scenario.toml");
+    assert!(
+        refused.status == 3 && refused.stderr.contains("a level that is 80.0 degC of the basin's own"),
+        "{}",
+        refused.stderr
+    );
+}
+
+/// Minima and maxima exchanged: no year is left, and the advice gives the record back.
+#[test]
+fn exchanged_columns_are_recognised() {
+    let basin = Basin::new();
+    let plain = basin.run("daily scenario.toml").stdout;
+    basin.write("weather.csv", &weather(3).replacen("tmin_c,tmax_c", "tmax_c,tmin_c", 1));
+    let refused = basin.run("daily scenario.toml");
+    assert!(
+        refused.status == 3 && refused.stderr.contains("exchange the columns of tmin and tmax"),
+        "{}",
+        refused.stderr
+    );
+    let text = basin.read("scenario.toml");
+    let [low, high] = ["column = \"tmin_c\"", "column = \"tmax_c\""];
+    basin.write(
+        "scenario.toml",
+        &text.replace(low, "column = \"?\"").replace(high, low).replace("column = \"?\"", high),
+    );
+    assert_eq!(basin.run("daily scenario.toml").stdout, plain);
+}
