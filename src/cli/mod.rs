@@ -9,6 +9,7 @@ mod input;
 mod last_words;
 mod output;
 mod progress;
+mod runs;
 mod start;
 mod study;
 

@@ -5,18 +5,17 @@ use super::assemble::{Ready, assemble};
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
-use crate::ensemble::{Halt, Plan, record_years, run as run_ensemble};
+use super::runs;
+use crate::ensemble::record_years;
 use crate::fault::Fault;
 use crate::figures::{FIGURES, Setting, of_sites};
-use crate::findings::{Findings, Questions, answer};
-use crate::perturb::YearBlocks;
+use crate::findings::Findings;
 use crate::report::numbers::counted;
 use crate::report::{
     Answer, Reader, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html, manifest_json,
     publish, summary_json, tables,
 };
 use crate::season::Measures;
-use crate::snow::Path as RowPath;
 use serde::Serialize;
 use std::path::{Path, PathBuf};
 
@@ -55,7 +54,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         counted(scenario.warming.levels_c.len(), "level"),
         counted(ready.basin.bands.len(), "band")
     ));
-    let findings = in_pool(shared, || find(&ready, &measures, &progress))??;
+    let findings = in_pool(shared, || runs::find(&ready, &measures, &progress))??;
 
     progress.stage("writing figures, tables and briefing");
     let study = describe(&ready, &measures, &findings, path, shared)?;
@@ -95,48 +94,6 @@ fn in_pool<T: Send>(shared: &Shared, work: impl FnOnce() -> T + Send) -> Result<
     let pool = rayon::ThreadPoolBuilder::new().num_threads(threads).build();
     let pool = pool.map_err(|error| Failure::Ours(format!("cannot start threads: {error}")))?;
     Ok(pool.install(work))
-}
-
-fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findings, Failure> {
-    let scenario = &ready.scenario;
-    let warming = &scenario.warming;
-    let changes: Vec<_> = warming.levels_c.iter().map(|level| warming.warming.at(*level)).collect();
-    let lanes = ready.lanes(&changes);
-    let generator = YearBlocks {
-        record: &ready.drawn_from,
-        seed: scenario.seed,
-        years: scenario.realizations.years,
-        mean_run_years: scenario.realizations.mean_run_years,
-        mean_change_sd_pct: scenario.realizations.mean_change_sd_pct.unwrap_or(0.0),
-    };
-    let plan = Plan {
-        lanes: &lanes,
-        levels: changes.len(),
-        reference: warming.reference,
-        bands: ready.basin.bands.len(),
-        measures,
-        generator: &generator,
-        realizations: scenario.realizations.count,
-        path: RowPath::default(),
-    };
-    let seasons = run_ensemble(&plan, progress).map_err(halted)?;
-    progress.stage("answering questions about them");
-    let questions = Questions {
-        levels_c: &warming.levels_c,
-        reference: warming.reference,
-        bands: &ready.basin.bands,
-        seed: scenario.seed,
-    };
-    let findings = answer(&seasons, &questions, progress).map_err(halted)?;
-    let comparisons = ready.comparisons().map_err(|open| Failure::Ours(open.to_string()))?;
-    Ok(Findings { comparisons, ..findings })
-}
-
-fn halted(halt: Halt) -> Failure {
-    match halt {
-        Halt::Stopped => Failure::Interrupted,
-        Halt::Ledger(open) => Failure::Ours(open.to_string()),
-    }
 }
 
 fn describe<'a>(

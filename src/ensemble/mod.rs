@@ -6,11 +6,13 @@ mod realization;
 mod record;
 mod run;
 mod seasons;
+mod swe_days;
 mod watch;
 
 pub use climate::{BandClimate, WinterMonths, band_climates};
 pub use plan::Plan;
 pub use record::{RecordYear, record_years};
-pub use run::run;
-pub use seasons::Seasons;
+pub use run::{run, run_basin};
+pub use seasons::{BasinSeasons, Seasons};
+pub use swe_days::{COUNTED_DAYS, SweBins, SweDays};
 pub use watch::{Halt, Silent, Watch};

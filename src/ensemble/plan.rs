@@ -5,6 +5,7 @@ use crate::season::Measures;
 use crate::snow::{Lanes, Path};
 
 /// What is to be run.
+#[derive(Clone, Copy)]
 pub struct Plan<'a> {
     /// Every band at every level, a group of lanes and a basin mean for each level.
     pub lanes: &'a Lanes,

@@ -1,22 +1,19 @@
-//! Puts every question to an ensemble, measure by measure, for the basin and for each band.
+//! Puts every question to a study's runs, measure by measure, for the basin and for each band.
 
-use super::chance::Chances;
-use super::crossing::{Crossing, CrossingRange, crossing, crossing_range};
-use super::distribution::Distribution;
-use super::quantile::{quantile, sorted};
-use super::resample::{Estimate, Ranked, Resamples};
-use super::shift::{Shift, percent_change};
-use super::spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
-use super::variance::{TwoWay, VarianceShares};
+use super::measure::{Asked, Found, MeasureFindings};
+use super::record_range::{RecordRange, Refit};
+use super::resample::Resamples;
+use super::through_year::SweThroughYear;
+use super::yardstick::{Assumed, Levels, yardsticks};
 use crate::basin::Band;
-use crate::ensemble::{Halt, Seasons, Watch};
+use crate::ensemble::{BasinSeasons, Halt, Seasons, Watch};
 use crate::fit::Comparison;
-use crate::season::{Kind, Measure, Place};
+use crate::season::{Measure, NONE, NOT_GONE, Place};
 use ndarray::{ArrayView2, Axis};
 use rayon::prelude::*;
 use serde::Serialize;
 
-/// What the findings need to know beside the seasons.
+/// What the findings need to know beside the runs.
 #[derive(Debug, Clone)]
 pub struct Questions<'a> {
     /// Warming levels, ascending, degC.
@@ -25,8 +22,32 @@ pub struct Questions<'a> {
     pub reference: usize,
     /// The bands, from the lowest.
     pub bands: &'a [Band],
+    /// Assumed standard deviation of the change of mean precipitation, percent; 0 for none.
+    pub mean_change_sd_pct: f64,
     /// Seed of the study, for the Monte Carlo error.
     pub seed: u64,
+}
+
+/// The runs of a study. All but the first may be missing; then what they answer is.
+#[derive(Debug, Clone, Copy)]
+pub struct Runs<'a> {
+    /// Every realization under every level.
+    pub study: &'a Seasons,
+    /// The reference alone, temperatures held.
+    pub temperature_held: Option<&'a Seasons>,
+    /// Runs that assume another change of mean precipitation.
+    pub other_changes: &'a [OtherChange],
+    /// What resampled records answer.
+    pub refits: &'a [Refit],
+}
+
+/// The same realizations under another assumed change of mean precipitation.
+#[derive(Debug, Clone, PartialEq)]
+pub struct OtherChange {
+    /// How many times the study's assumption; 0 for none.
+    pub times_assumed: f64,
+    /// The reference alone.
+    pub reference: BasinSeasons,
 }
 
 /// Everything that is found.
@@ -40,6 +61,8 @@ pub struct Findings {
     pub realizations: usize,
     /// Water years of a realization.
     pub years: usize,
+    /// SWE of the basin through the water year.
+    pub swe_through_year: SweThroughYear,
     /// Of the basin mean, one entry a measure, the headline's first.
     pub basin: Vec<MeasureFindings>,
     /// Of each band, from the lowest.
@@ -59,242 +82,99 @@ pub struct BandFindings {
     pub measures: Vec<MeasureFindings>,
 }
 
-/// Findings about one measure in one place.
-#[derive(Debug, Clone, PartialEq, Serialize)]
-pub struct MeasureFindings {
-    /// The measure.
-    pub measure: Measure,
-    /// Spread of the period value over realizations at the reference, with its own temperatures.
-    pub precipitation_spread: Option<Spread>,
-    /// Spread over single years at the reference; for the basin alone.
-    #[serde(skip_serializing_if = "Option::is_none")]
-    pub weather_spread: Option<Spread>,
-    /// From which warming on the shift outweighs the precipitation spread.
-    pub outweighs: Crossing,
-    /// Monte Carlo range of that warming.
-    pub outweighs_range: Option<CrossingRange>,
-    /// One entry a level, in the order of the levels.
-    pub levels: Vec<LevelFindings>,
-}
-
-/// Findings about one measure in one place at one level.
-#[derive(Debug, Clone, PartialEq, Serialize)]
-pub struct LevelFindings {
-    /// The level, degC.
-    pub level_c: f64,
-    /// Period values over realizations.
-    pub periods: Distribution,
-    /// Single years of all realizations; for the basin alone.
-    #[serde(skip_serializing_if = "Option::is_none")]
-    pub single_years: Option<Distribution>,
-    /// Years with none and years whose snow never went, over all realizations.
-    pub years_undefined: [usize; 2],
-    /// Paired change from the reference.
-    pub shift: Option<Shift>,
-    /// The median change as a percentage of the reference's median; of amounts.
-    pub percent_change: Option<f64>,
-    /// Shift over the half of the reference's 5-95 % precipitation spread that it points to.
-    pub signal_to_spread: Option<Estimate>,
-    /// Against one standard deviation.
-    pub signal_to_noise: Option<SignalToNoise>,
-    /// Shares of the period values' sums of squares over reference and level, two-way without replication; not the
-    /// partition of single years.
-    pub period_variance_shares: Option<VarianceShares>,
-    /// Unpaired chances; for the basin alone.
-    #[serde(skip_serializing_if = "Option::is_none")]
-    pub chances: Option<Chances>,
-}
-
-/// Period values `[level][realization]` of one measure in one place, and the single years where they are kept.
-struct Asked<'a> {
-    measure: &'a Measure,
-    periods: ArrayView2<'a, f64>,
-    years: Option<ndarray::ArrayView3<'a, f64>>,
-    undefined: Vec<[usize; 2]>,
-}
-
 /// Answers every question about every measure; `watch` is asked before each whether to stop.
 ///
 /// # Errors
 /// `watch` wanting to stop.
-pub fn answer(seasons: &Seasons, questions: &Questions<'_>, watch: &dyn Watch) -> Result<Findings, Halt> {
-    let (_, _, realizations, years) = seasons.basin_years.dim();
+pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> Result<Findings, Halt> {
+    let study = runs.study;
+    let measures = &study.basin.measures;
+    let (_, _, realizations, years) = study.basin.years.dim();
     let resamples = Resamples::new(questions.seed, realizations);
-    let in_basin: Vec<Asked<'_>> =
-        seasons.measures.iter().enumerate().map(|(at, _)| of_basin(seasons, at)).collect();
-    let in_bands: Vec<Asked<'_>> = (0..questions.bands.len())
+    let levels = Levels { levels_c: questions.levels_c, reference: questions.reference };
+    let asked = |of: &Asked<'_>| {
+        if watch.wants_stop() { Err(Halt::Stopped) } else { Ok(of.find(levels, &resamples)) }
+    };
+    let few = resamples.few();
+    let of_basin = |at: usize| Ok(runs.beside(at, asked(&runs.of_basin(at, questions))?, questions, &few));
+    let basin = (0..measures.len()).into_par_iter().map(of_basin).collect::<Result<Vec<_>, Halt>>()?;
+    let of_bands: Vec<Asked<'_>> = (0..questions.bands.len())
         .flat_map(|band| {
             let everywhere = |(_, measure): &(usize, &Measure)| measure.place == Place::BandsAndBasin;
-            seasons
-                .measures
-                .iter()
-                .enumerate()
-                .filter(everywhere)
-                .map(move |(at, _)| of_band(seasons, band, at))
+            measures.iter().enumerate().filter(everywhere).map(move |(at, _)| runs.of_band(band, at))
         })
         .collect();
-    let find = |asked: &Asked<'_>| {
-        if watch.wants_stop() { Err(Halt::Stopped) } else { Ok(asked.find(questions, &resamples)) }
-    };
-    let basin = in_basin.par_iter().map(find).collect::<Result<Vec<MeasureFindings>, Halt>>()?;
-    let mut of_bands = in_bands.par_iter().map(find).collect::<Result<Vec<_>, Halt>>()?.into_iter();
-    let measures_of_a_band = in_bands.len() / questions.bands.len();
+    let mut of_each_band = of_bands.par_iter().map(asked).collect::<Result<Vec<_>, Halt>>()?.into_iter();
+    let measures_of_a_band = of_bands.len() / questions.bands.len();
+    let bands = questions.bands.iter().map(|band| BandFindings {
+        band: *band,
+        measures: of_each_band.by_ref().take(measures_of_a_band).map(|found| found.findings).collect(),
+    });
     Ok(Findings {
         levels_c: questions.levels_c.to_vec(),
         reference: questions.reference,
         realizations,
         years,
+        swe_through_year: SweThroughYear::of(&study.swe_days, questions.levels_c),
         basin,
-        bands: questions
-            .bands
-            .iter()
-            .map(|band| BandFindings {
-                band: *band,
-                measures: of_bands.by_ref().take(measures_of_a_band).collect(),
-            })
-            .collect(),
+        bands: bands.collect(),
         comparisons: Vec::new(),
     })
 }
 
-fn of_basin(seasons: &Seasons, at: usize) -> Asked<'_> {
-    let years = seasons.basin_years.index_axis(Axis(1), at);
-    let count = |level: usize, what: f64| {
-        years.index_axis(Axis(0), level).iter().filter(|value| **value == what).count()
-    };
-    let levels = years.len_of(Axis(0));
-    Asked {
-        measure: &seasons.measures[at],
-        periods: seasons.basin_periods.index_axis(Axis(1), at),
-        undefined: (0..levels)
-            .map(|level| [count(level, crate::season::NONE), count(level, crate::season::NOT_GONE)])
-            .collect(),
-        years: Some(years),
-    }
-}
-
-fn of_band(seasons: &Seasons, band: usize, at: usize) -> Asked<'_> {
-    let undefined = seasons.band_undefined.index_axis(Axis(1), band);
-    Asked {
-        measure: &seasons.measures[at],
-        periods: seasons.band_periods.view().index_axis_move(Axis(1), band).index_axis_move(Axis(1), at),
-        undefined: undefined.index_axis(Axis(1), at).iter().map(|count| count.map(|n| n as usize)).collect(),
-        years: None,
-    }
-}
-
-/// The reference as every level is held against it.
-struct Reference {
-    periods: Vec<f64>,
-    median: f64,
-    spread: Option<Spread>,
-    /// The spread's quantiles in every resample.
-    spreads: Vec<Option<[f64; 3]>>,
-    years: Option<Ranked>,
-}
-
-impl Asked<'_> {
-    fn find(&self, questions: &Questions<'_>, resamples: &Resamples) -> MeasureFindings {
-        let periods: Vec<f64> = self.periods.row(questions.reference).to_vec();
-        let reference = Reference {
-            median: quantile(&sorted(periods.iter().copied()), 0.5),
-            spread: Spread::of(&periods),
-            spreads: Spread::resampled(&periods, resamples),
-            years: self.ranked_years(questions.reference),
-            periods,
+impl Runs<'_> {
+    fn of_basin(&self, at: usize, questions: &Questions<'_>) -> Asked<'_> {
+        let basin = &self.study.basin;
+        let years = basin.years.index_axis(Axis(1), at);
+        let count = |level: usize, what: f64| {
+            years.index_axis(Axis(0), level).iter().filter(|value| **value == what).count()
         };
-        let mut levels = Vec::with_capacity(questions.levels_c.len());
-        let mut ratios_above = Vec::new();
-        for (level, level_c) in questions.levels_c.iter().enumerate() {
-            let found = self.find_level(level, *level_c);
-            if level == questions.reference {
-                levels.push(found);
-                continue;
-            }
-            let (found, ratios) = self.compare(found, level, &reference, resamples);
-            levels.push(found);
-            if level > questions.reference {
-                ratios_above.push((*level_c, ratios));
-            }
+        let levels = 0..years.len_of(Axis(0));
+        Asked {
+            measure: &basin.measures[at],
+            periods: basin.periods.index_axis(Axis(1), at),
+            undefined: levels.map(|level| [count(level, NONE), count(level, NOT_GONE)]).collect(),
+            held: self
+                .temperature_held
+                .map(|held| held.basin.periods.index_axis(Axis(0), 0).index_axis_move(Axis(0), at)),
+            years: Some((years, questions.bands.iter().map(|band| band.area_km2).sum())),
         }
-        let warmer: Vec<(f64, Option<f64>)> = levels[questions.reference + 1..]
-            .iter()
-            .map(|level| (level.level_c, level.signal_to_spread.map(|ratio| ratio.value)))
-            .collect();
-        let reference_c = questions.levels_c[questions.reference];
-        let single_years = reference.years.as_ref();
-        MeasureFindings {
-            measure: self.measure.clone(),
-            precipitation_spread: reference.spread,
-            weather_spread: single_years.and_then(|years| {
-                Spread::of(&years.values().iter().map(|(value, _)| *value).collect::<Vec<_>>())
+    }
+
+    fn of_band(&self, band: usize, at: usize) -> Asked<'_> {
+        let undefined = self.study.band_undefined.index_axis(Axis(1), band);
+        Asked {
+            measure: &self.study.basin.measures[at],
+            periods: self.study.band_periods.index_axis(Axis(1), band).index_axis_move(Axis(1), at),
+            undefined: undefined
+                .index_axis(Axis(1), at)
+                .iter()
+                .map(|count| count.map(|n| n as usize))
+                .collect(),
+            held: self.temperature_held.map(|held| {
+                let reference = held.band_periods.index_axis(Axis(0), 0);
+                reference.index_axis_move(Axis(0), band).index_axis_move(Axis(0), at)
             }),
-            outweighs: crossing(reference_c, &warmer),
-            outweighs_range: crossing_range(reference_c, &ratios_above),
-            levels,
+            years: None,
         }
     }
 
-    fn ranked_years(&self, level: usize) -> Option<Ranked> {
-        let years = self.years?.index_axis_move(Axis(0), level);
-        Some(Ranked::new(years.indexed_iter().map(|((realization, _), value)| (*value, realization))))
-    }
-
-    /// What a level is by itself.
-    fn find_level(&self, level: usize, level_c: f64) -> LevelFindings {
-        LevelFindings {
-            level_c,
-            periods: if self.years.is_some() {
-                Distribution::with_dots(self.periods.row(level).iter().copied())
-            } else {
-                Distribution::of(self.periods.row(level).iter().copied())
-            },
-            single_years: self
-                .years
-                .map(|years| Distribution::of(years.index_axis(Axis(0), level).iter().copied())),
-            years_undefined: self.undefined[level],
-            shift: None,
-            percent_change: None,
-            signal_to_spread: None,
-            signal_to_noise: None,
-            period_variance_shares: None,
-            chances: None,
+    /// Adds what stands beside a basin measure's findings: its yardsticks, and what other records would have answered.
+    fn beside(&self, at: usize, found: Found, questions: &Questions<'_>, few: &Resamples) -> MeasureFindings {
+        let levels = Levels { levels_c: questions.levels_c, reference: questions.reference };
+        let Found { findings, shifts } = found;
+        let of = |years: ArrayView2<'_, f64>, times_assumed: f64| {
+            let mean_change_sd_pct = questions.mean_change_sd_pct * times_assumed;
+            let assumed = Assumed { years, mean_change_sd_pct, times_assumed };
+            yardsticks(findings.measure.kind, assumed, &shifts, levels, few)
+        };
+        let years = self.study.basin.years.index_axis(Axis(1), at);
+        let mut all = of(years.index_axis_move(Axis(0), questions.reference), 1.0);
+        for other in self.other_changes {
+            let years = other.reference.years.index_axis(Axis(0), 0);
+            all.extend(of(years.index_axis_move(Axis(0), at), other.times_assumed));
         }
-    }
-
-    /// What a level is against the reference, and its signal to spread in every resample.
-    fn compare(
-        &self,
-        found: LevelFindings,
-        level: usize,
-        reference: &Reference,
-        resamples: &Resamples,
-    ) -> (LevelFindings, Vec<Option<f64>>) {
-        let warmed: Vec<f64> = self.periods.row(level).to_vec();
-        let chances =
-            reference.years.as_ref().zip(self.ranked_years(level)).map(|(reference_years, warmed_years)| {
-                Chances::of(&reference.periods, &warmed, reference_years, &warmed_years, resamples)
-            });
-        let Some((shift, shifts)) = Shift::of(&reference.periods, &warmed, resamples) else {
-            return (LevelFindings { chances, ..found }, Vec::new());
-        };
-        let median = shift.median.value;
-        let ratio = reference
-            .spread
-            .and_then(|spread| signal_to_spread(median, &spread, &shifts, &reference.spreads));
-        let found = LevelFindings {
-            shift: Some(shift),
-            percent_change: match self.measure.kind {
-                Kind::AmountMm => percent_change(median, reference.median),
-                Kind::DayOfWaterYear => None,
-            },
-            signal_to_spread: ratio.as_ref().map(|(ratio, _)| *ratio),
-            signal_to_noise: Some(signal_to_noise(&reference.periods, &warmed)),
-            period_variance_shares: TwoWay::of(&[&reference.periods, &warmed])
-                .and_then(|table| table.shares()),
-            chances,
-            ..found
-        };
-        (found, ratio.map_or(Vec::new(), |(_, ratios)| ratios))
+        let record_range = RecordRange::of(self.refits, at, questions.levels_c);
+        MeasureFindings { yardsticks: all, record_range, ..findings }
     }
 }

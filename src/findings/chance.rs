@@ -66,6 +66,20 @@ impl Chances {
     }
 }
 
+/// The chance that an independent warmed value lies below a reference one, without its error.
+pub(super) fn below_reference(reference: &[f64], warmed: &[f64]) -> Option<f64> {
+    let ranked = |values: &[f64]| Ranked::new(values.iter().copied().zip(0..));
+    let odds = Odds::new(&ranked(reference), &ranked(warmed), reference.len());
+    odds.chance().map(|chance| chance.value)
+}
+
+/// The share of warmed values that reach the reference's median, without its error.
+pub(super) fn reaches_median_share(reference: &[f64], warmed: &[f64]) -> Option<f64> {
+    let median = quantile(&sorted(reference.iter().copied()), 0.5);
+    let reached = warmed.iter().filter(|value| **value >= median).count();
+    median.is_finite().then(|| reached as f64 / warmed.len() as f64)
+}
+
 fn reaches_median(reference: &[f64], warmed: &[f64], resamples: &Resamples) -> Option<Chance> {
     let median = quantile(&sorted(reference.iter().copied()), 0.5);
     if !median.is_finite() {

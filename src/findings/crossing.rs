@@ -70,16 +70,22 @@ pub struct CrossingRange {
 /// resample. Nothing where a resample has no ratio at a level that it needs.
 pub(super) fn crossing_range(reference_c: f64, ratios: &[(f64, Vec<Option<f64>>)]) -> Option<CrossingRange> {
     let resamples = ratios.first()?.1.len();
-    let mut found = Vec::with_capacity(resamples);
-    for resample in 0..resamples {
+    range_of((0..resamples).map(|resample| {
         let one: Vec<(f64, Option<f64>)> =
             ratios.iter().map(|(level_c, of)| (*level_c, of.get(resample).copied().flatten())).collect();
-        found.push(match crossing(reference_c, &one) {
-            Crossing::At { level_c, .. } => level_c,
-            Crossing::NotReached { .. } => f64::INFINITY,
-            Crossing::Unknown => return None,
-        });
-    }
+        crossing(reference_c, &one)
+    }))
+}
+
+/// The 5-95 % range of first crossings; nothing where one is unknown.
+pub(super) fn range_of(crossings: impl Iterator<Item = Crossing>) -> Option<CrossingRange> {
+    let found = crossings
+        .map(|crossing| match crossing {
+            Crossing::At { level_c, .. } => Some(level_c),
+            Crossing::NotReached { .. } => Some(f64::INFINITY),
+            Crossing::Unknown => None,
+        })
+        .collect::<Option<Vec<f64>>>()?;
     let found = sorted(found);
     let reached = |p| Some(quantile(&found, p)).filter(|level_c| level_c.is_finite());
     Some(CrossingRange { q05_c: reached(0.05), q95_c: reached(0.95) })

@@ -1,7 +1,7 @@
 //! How a measure is distributed over realizations, or over single years.
 
 use super::quantile::{quantile, sorted};
-use crate::season::{NONE, NOT_GONE, Outcome};
+use crate::season::{Kind, NONE, NOT_GONE, Outcome};
 use serde::Serialize;
 
 /// Dots that stand for a distribution in a figure, each for an equal share of it.
@@ -33,12 +33,12 @@ pub struct Distribution {
 
 impl Distribution {
     /// The distribution of the values.
-    pub fn of(values: impl IntoIterator<Item = f64>) -> Self {
+    pub fn of(_: Kind, values: impl IntoIterator<Item = f64>) -> Self {
         Self::of_sorted(&sorted(values))
     }
 
     /// The same with its dots.
-    pub fn with_dots(values: impl IntoIterator<Item = f64>) -> Self {
+    pub fn with_dots(_: Kind, values: impl IntoIterator<Item = f64>) -> Self {
         let values = sorted(values);
         let dot = |dot: usize| Outcome::from(quantile(&values, (dot as f64 + 0.5) / DOTS as f64));
         Self { dots: (0..DOTS).map(dot).collect(), ..Self::of_sorted(&values) }

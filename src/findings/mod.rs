@@ -6,19 +6,33 @@ mod answer;
 mod chance;
 mod crossing;
 mod distribution;
+mod exceedance;
+mod measure;
 mod odds;
 mod quantile;
+mod record_range;
 mod resample;
 mod shift;
 mod spread;
+mod temperature_held;
+mod through_year;
 mod variance;
+mod yardstick;
 
-pub use answer::{BandFindings, Findings, LevelFindings, MeasureFindings, Questions, answer};
+pub use answer::{BandFindings, Findings, OtherChange, Questions, Runs, answer};
 pub use chance::{Chance, Chances};
 pub use crossing::{Crossing, CrossingRange, crossing};
 pub use distribution::{DOTS, Distribution};
+pub use exceedance::{EXCEEDANCE_PCT, Exceeded};
+pub use measure::{LevelFindings, MeasureFindings};
 pub use quantile::{quantile, sorted};
+pub use record_range::{
+    REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Range, RecordRange, RecordRangeLevel, Refit,
+};
 pub use resample::{Estimate, Resamples};
 pub use shift::{LEAST_REFERENCE_MM, Shift, percent_change};
 pub use spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
+pub use temperature_held::{HeldLevel, TemperatureHeldSpread};
+pub use through_year::{LevelThroughYear, SweThroughYear};
 pub use variance::{TwoWay, VarianceShares};
+pub use yardstick::{TIMES_ASSUMED, Yardstick, YardstickLevel};

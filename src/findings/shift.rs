@@ -2,6 +2,7 @@
 
 use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Ranked, Resamples};
+use crate::season::Kind;
 use serde::Serialize;
 
 /// No percentage is given of a reference median below this, mm.
@@ -12,6 +13,8 @@ pub const LEAST_REFERENCE_MM: f64 = 10.0;
 pub struct Shift {
     /// Median of the paired changes, mm or days, with its Monte Carlo error.
     pub median: Estimate,
+    /// Mean of the paired changes.
+    pub mean: f64,
     /// Their 5 % quantile.
     pub q05: f64,
     /// Their 95 % quantile.
@@ -42,6 +45,7 @@ impl Shift {
         let resampled = resamples.each(|weights| ranked.quantiles(weights, [0.5]).map(|[median]| median));
         let shift = Self {
             median: Estimate::new(quantile(&in_order, 0.5), resampled.iter().copied()),
+            mean: in_order.iter().sum::<f64>() / pairs as f64,
             q05: quantile(&in_order, 0.05),
             q95: quantile(&in_order, 0.95),
             pairs,
@@ -51,7 +55,9 @@ impl Shift {
     }
 }
 
-/// `100 * median change / median reference`; nothing where the reference is below 10 mm.
-pub fn percent_change(median_change_mm: f64, median_reference_mm: f64) -> Option<f64> {
-    (median_reference_mm >= LEAST_REFERENCE_MM).then(|| 100.0 * median_change_mm / median_reference_mm)
+/// `100 * median change / median reference`; nothing where the reference is too small for a percentage of its kind, or
+/// the kind has none.
+pub fn percent_change(kind: Kind, median_change: f64, median_reference: f64) -> Option<f64> {
+    let is_enough = kind.least_reference().is_some_and(|least| median_reference >= least);
+    is_enough.then(|| 100.0 * median_change / median_reference)
 }

@@ -34,9 +34,18 @@ impl Spread {
     }
 
     /// The 5 %, 50 % and 95 % quantiles of every resample.
-    pub(super) fn resampled(values: &[f64], resamples: &Resamples) -> Vec<Option<[f64; 3]>> {
-        let ranked = Ranked::new(values.iter().copied().zip(0..));
+    pub(super) fn resampled(ranked: &Ranked, resamples: &Resamples) -> Vec<Option<[f64; 3]>> {
         resamples.each(|weights| ranked.quantiles(weights, [0.05, 0.5, 0.95]))
+    }
+
+    /// The size of a shift over the half of the spread that it points to; nothing where there is no spread.
+    pub(super) fn times(&self, shift: f64) -> Option<f64> {
+        over_half(shift, self.half_towards(shift))
+    }
+
+    /// A mean shift, without its sign, over one standard deviation; nothing where there is none.
+    pub(super) fn deviations(&self, mean_shift: f64) -> Option<f64> {
+        (self.standard_deviation > LEAST_SPREAD).then(|| mean_shift.abs() / self.standard_deviation)
     }
 
     /// From the median to the end of the spread that a shift points to: `q50 - q5` for a fall, `q95 - q50` for a rise.
@@ -56,17 +65,20 @@ pub fn signal_to_spread(
     shifts: &[Option<f64>],
     spreads: &[Option<[f64; 3]>],
 ) -> Option<(Estimate, Vec<Option<f64>>)> {
-    let ratio = |shift: f64, half: f64| (half > LEAST_SPREAD && half.is_finite()).then(|| shift.abs() / half);
-    let value = ratio(shift, spread.half_towards(shift))?;
+    let value = spread.times(shift)?;
     let resampled: Vec<Option<f64>> = shifts
         .iter()
         .zip(spreads)
         .map(|(shift, quantiles)| {
             let (shift, quantiles) = ((*shift)?, (*quantiles)?);
-            ratio(shift, half_towards(quantiles, shift))
+            over_half(shift, half_towards(quantiles, shift))
         })
         .collect();
     Some((Estimate::new(value, resampled.iter().copied()), resampled))
+}
+
+fn over_half(shift: f64, half: f64) -> Option<f64> {
+    (half > LEAST_SPREAD && half.is_finite()).then(|| shift.abs() / half)
 }
 
 fn half_towards([q05, q50, q95]: [f64; 3], shift: f64) -> f64 {

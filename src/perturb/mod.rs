@@ -4,12 +4,14 @@ mod global;
 mod level;
 mod mean_change;
 mod stream;
+mod temperature_held;
 mod year_blocks;
 
 pub use global::GlobalWarming;
 pub use level::{MonthlyChange, PrecipitationChange, StatedChange, Warming};
 pub use mean_change::mean_change_factor;
 pub use stream::{resampling_stream, stream};
+pub use temperature_held::TemperatureHeld;
 pub use year_blocks::YearBlocks;
 
 use crate::weather::Series;

@@ -5,14 +5,21 @@ use rand::rngs::ChaCha8Rng;
 
 /// The stream of one realization. Streams of the same seed never overlap, whatever the order they are drawn in.
 pub fn stream(seed: u64, realization: u32) -> ChaCha8Rng {
-    let mut random = ChaCha8Rng::seed_from_u64(seed);
-    random.set_stream(u64::from(realization));
-    random
+    numbered(seed, u64::from(realization))
 }
 
 /// The stream that resamples realizations for the Monte Carlo error: beyond those of all realizations.
 pub fn resampling_stream(seed: u64) -> ChaCha8Rng {
+    numbered(seed, 1 << 32)
+}
+
+/// The streams that resample the record: beyond all others.
+pub(super) fn record_stream(seed: u64, number: u32) -> ChaCha8Rng {
+    numbered(seed, (1 << 33) + u64::from(number))
+}
+
+fn numbered(seed: u64, stream: u64) -> ChaCha8Rng {
     let mut random = ChaCha8Rng::seed_from_u64(seed);
-    random.set_stream(1 << 32);
+    random.set_stream(stream);
     random
 }

@@ -3,13 +3,13 @@
 
 use super::Generator;
 use super::mean_change::mean_change_factor;
-use super::stream::stream;
+use super::stream::{record_stream, stream};
 use crate::weather::Series;
-use rand::RngExt;
+use rand::{Rng, RngExt};
 use rand_distr::{Distribution, StandardNormal};
 
 /// Resamples a record's water years in runs of random length, weather kept jointly and leap days kept.
-#[derive(Debug, Clone)]
+#[derive(Debug, Clone, Copy)]
 pub struct YearBlocks<'r> {
     /// The usable years, catch-corrected.
     pub record: &'r Series,
@@ -24,24 +24,15 @@ pub struct YearBlocks<'r> {
 }
 
 impl Generator for YearBlocks<'_> {
-    /// Draws z of the mean change first, wanted or not, so that the order of years does not depend on it. Then, a year
-    /// at a time: with probability 1/L, and wherever the record has a gap, a new run starts at any usable year; else
-    /// the next year of the record follows, the first after the last.
+    /// Draws z of the mean change first, wanted or not, so that the order of years does not depend on it; then the years.
     fn fill(&self, realization: u32, into: &mut Series) {
         let mut random = stream(self.seed, realization);
         let draw: f64 = StandardNormal.sample(&mut random);
         let factor = mean_change_factor(self.mean_change_sd_pct, draw);
         into.clear();
-        let record = &self.record.years;
-        let mut last: Option<usize> = None;
-        for year in 0..self.years {
-            let starts_run = random.random::<f64>() * self.mean_run_years < 1.0;
-            let anywhere = random.random_range(0..record.len());
-            let next = last.filter(|_| !starts_run).and_then(|last| self.after(last));
-            let taken = next.unwrap_or(anywhere);
-            into.push_year(self.record, &record[taken], year > 0);
-            last = Some(taken);
-        }
+        self.draw_years(&mut random, self.years, |year, _| {
+            into.push_year(self.record, &self.record.years[year], !into.years.is_empty());
+        });
         for precipitation in &mut into.precipitation_mm {
             *precipitation *= factor;
         }
@@ -49,6 +40,32 @@ impl Generator for YearBlocks<'_> {
 }
 
 impl YearBlocks<'_> {
+    /// The record's years drawn anew, as many as there are, in runs like those of a realization: a record that could have
+    /// been, for the uncertainty that comes from having only this one. A run ends as a gap does.
+    pub fn resampled_record(&self, number: u32) -> Series {
+        let mut resampled = Series::default();
+        let mut random = record_stream(self.seed, number);
+        self.draw_years(&mut random, self.record.years.len(), |year, continues| {
+            resampled.push_year(self.record, &self.record.years[year], continues);
+        });
+        resampled
+    }
+
+    /// Draws years: with probability 1/L, and wherever the record has a gap, a new run starts at any usable year; else the
+    /// next year of the record follows, the first after the last. `take` gets the year's place in the record and whether
+    /// it continues a run.
+    fn draw_years(&self, random: &mut impl Rng, count: usize, mut take: impl FnMut(usize, bool)) {
+        let mut last: Option<usize> = None;
+        for _ in 0..count {
+            let starts_run = random.random::<f64>() * self.mean_run_years < 1.0;
+            let anywhere = random.random_range(0..self.record.years.len());
+            let next = last.filter(|_| !starts_run).and_then(|last| self.after(last));
+            let taken = next.unwrap_or(anywhere);
+            take(taken, next.is_some());
+            last = Some(taken);
+        }
+    }
+
     /// The year that follows in the record, circular; none at a gap.
     fn after(&self, year: usize) -> Option<usize> {
         match self.record.years.get(year + 1) {

@@ -17,6 +17,16 @@ pub enum Kind {
     DayOfWaterYear,
 }
 
+impl Kind {
+    /// The reference median from which on a change is told as a percentage too; nothing where it never is.
+    pub fn least_reference(self) -> Option<f64> {
+        match self {
+            Self::AmountMm => Some(10.0),
+            Self::DayOfWaterYear => None,
+        }
+    }
+}
+
 /// Of what a measure is taken.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
 #[serde(rename_all = "snake_case")]
@@ -38,11 +48,13 @@ pub struct Measure {
     pub kind: Kind,
     /// Of what it is taken.
     pub place: Place,
+    /// Whether it is water that is told as a volume, too.
+    pub is_volume: bool,
 }
 
 impl Measure {
     pub(super) fn amount(name: String, title: String) -> Self {
-        Self { name, title, kind: Kind::AmountMm, place: Place::BandsAndBasin }
+        Self { name, title, kind: Kind::AmountMm, place: Place::BandsAndBasin, is_volume: false }
     }
 
     pub(super) fn date(name: &str, title: &str) -> Self {
@@ -51,6 +63,7 @@ impl Measure {
             title: title.to_owned(),
             kind: Kind::DayOfWaterYear,
             place: Place::BandsAndBasin,
+            is_volume: false,
         }
     }
 }

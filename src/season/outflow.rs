@@ -13,6 +13,7 @@ pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
             Measure::amount(format!("outflow_{name}_mm"), format!("snowpack outflow, {title}")),
             Measure::amount(format!("water_input_{name}_mm"), format!("water input, {title}")),
         ]
+        .map(|measure| Measure { is_volume: true, ..measure })
     });
     windows.chain([Measure::date("outflow_centroid_day", "centroid of snowpack outflow")]).collect()
 }

@@ -1,5 +1,6 @@
 //! The year block: one water year of every lane and basin mean, as the engine leaves it.
 
+use super::lanes::Lanes;
 use chrono::NaiveDate;
 
 /// One water year, `[day][column]`: first the lanes, padded, then the basin means ("mixes"), padded.
@@ -77,6 +78,26 @@ impl YearBlock {
                 liquid_mm: lane_rows(),
             }),
         }
+    }
+
+    /// A narrow block that holds the basin means of some lanes and nothing else.
+    pub fn of_means(lanes: &Lanes) -> Self {
+        Self::new(0, lanes.mix_width, false)
+    }
+
+    /// Copies the basin means into a narrow block, whose columns they are.
+    pub fn copy_means(&self, into: &mut Self) {
+        (into.first, into.days) = (self.first, self.days);
+        let copy = |from: &[f64], into: &mut [f64], narrow: usize| {
+            for (row, means) in from.chunks_exact(self.width).zip(into.chunks_exact_mut(narrow)) {
+                means.copy_from_slice(&row[self.mixes_at..]);
+            }
+        };
+        let narrow = into.width;
+        copy(&self.swe_mm[..(self.days + 1) * self.width], &mut into.swe_mm, narrow);
+        copy(&self.net_melt_mm[..self.days * self.width], &mut into.net_melt_mm, narrow);
+        copy(&self.outflow_mm[..self.days * self.width], &mut into.outflow_mm, narrow);
+        copy(&self.bare_ground_rain_mm[..self.days * self.width], &mut into.bare_ground_rain_mm, narrow);
     }
 
     /// One day's row of a table of this block, days counted from 0.

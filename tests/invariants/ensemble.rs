@@ -6,7 +6,7 @@ use ndarray::{Axis, Slice};
 use proptest::prelude::*;
 use rayon::ThreadPoolBuilder;
 use thawline::calendar::MonthDay;
-use thawline::ensemble::{Plan, Seasons, Silent, run};
+use thawline::ensemble::{Plan, Seasons, Silent, SweBins, run};
 use thawline::perturb::{MonthlyChange, YearBlocks};
 use thawline::season::{Measures, SeasonSettings};
 use thawline::snow::{Lanes, Path};
@@ -57,7 +57,8 @@ impl Study {
             path,
         };
         let pool = ThreadPoolBuilder::new().num_threads(threads).build().expect("threads");
-        pool.install(|| run(&plan, &Silent)).expect("a closed ledger")
+        let bins = SweBins::of_record(&self.lanes, &self.record).expect("a closed ledger");
+        pool.install(|| run(&plan, bins, &Silent)).expect("a closed ledger")
     }
 }
 
@@ -67,8 +68,8 @@ fn bits<'a>(values: impl IntoIterator<Item = &'a f64>) -> Vec<u64> {
 
 /// The bits of all that a run keeps.
 fn all_bits(seasons: &Seasons) -> (Vec<u64>, Vec<u32>) {
-    let values = seasons.basin_years.iter().chain(&seasons.basin_periods).chain(&seasons.band_periods);
-    (bits(values), seasons.band_undefined.iter().flatten().copied().collect())
+    let values = seasons.basin.years.iter().chain(&seasons.basin.periods).chain(&seasons.band_periods);
+    (bits(values), seasons.band_undefined.iter().flatten().chain(&seasons.swe_days.counts).copied().collect())
 }
 
 proptest! {
@@ -90,8 +91,8 @@ proptest! {
     fn other_realizations_do_not_show(scenario in scenarios()) {
         let study = Study::of(&scenario, &scenario.changes());
         let (few, many) = (study.run(2, 3, Path::Widest), study.run(2, 8, Path::Widest));
-        let first = many.basin_years.slice_axis(Axis(2), Slice::from(..3));
-        prop_assert_eq!(bits(&few.basin_years), bits(first));
+        let first = many.basin.years.slice_axis(Axis(2), Slice::from(..3));
+        prop_assert_eq!(bits(&few.basin.years), bits(first));
         let first = many.band_periods.slice_axis(Axis(3), Slice::from(..3));
         prop_assert_eq!(bits(&few.band_periods), bits(first));
     }
@@ -103,7 +104,7 @@ proptest! {
         let reference = changes[0].clone();
         changes.push(reference);
         let seasons = Study::of(&scenario, &changes).run(2, 5, Path::Widest);
-        let level = |level: usize| seasons.basin_years.index_axis(Axis(0), level);
+        let level = |level: usize| seasons.basin.years.index_axis(Axis(0), level);
         prop_assert_eq!(bits(level(0)), bits(level(changes.len() - 1)));
         let bands = |level: usize| seasons.band_periods.index_axis(Axis(0), level);
         prop_assert_eq!(bits(bands(0)), bits(bands(changes.len() - 1)));
@@ -116,7 +117,7 @@ proptest! {
         scenario.climate.mean_c = if is_cold { -60.0 } else { 40.0 };
         scenario.climate.wet_chance = 0.5;
         let seasons = Study::of(&scenario, &scenario.changes()[..1]).run(2, 3, Path::Widest);
-        let as_it_begins = (0..3).map(|realization| seasons.basin_years[[0, 0, realization, 0]]);
+        let as_it_begins = (0..3).map(|realization| seasons.basin.years[[0, 0, realization, 0]]);
         let has_rained = scenario.basin.bands.iter().any(|band| {
             scenario.basin.precipitation.factor(scenario.station_m, band.elevation_m) > 0.0
         });

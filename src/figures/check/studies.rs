@@ -3,8 +3,8 @@
 use super::super::{FIGURES, Figure, Setting, Svg};
 use crate::basin::Band;
 use crate::calendar::{MonthDay, WaterYearStart};
-use crate::ensemble::{Seasons, Silent};
-use crate::findings::{Findings, Questions, answer};
+use crate::ensemble::{BasinSeasons, COUNTED_DAYS, Seasons, Silent, SweBins, SweDays};
+use crate::findings::{Findings, Questions, Runs, answer};
 use crate::season::{Kind, Measure, NONE, NOT_GONE, Place};
 use crate::units::UnitSystem;
 use ndarray::{Array3, Array4};
@@ -39,41 +39,82 @@ impl Study<'_> {
             title: title.to_owned(),
             kind,
             place: Place::BandsAndBasin,
+            is_volume: name.starts_with("outflow"),
         };
         let measures = vec![
             measure("swe_04_01_mm", "1 April SWE", Kind::AmountMm),
             measure("melt_d50_day", "day with half of the net melt done", Kind::DayOfWaterYear),
             measure("melt_out_day", "melt-out", Kind::DayOfWaterYear),
+            measure("outflow_04_01_to_07_31_mm", "snowpack outflow, 1 April to 31 July", Kind::AmountMm),
         ];
         let (levels, count) = (self.levels_c.len(), self.realizations);
+        let is_amount = |measure: usize| matches!(measure, 0 | 3);
         let value = |level: usize, measure: usize, realization: usize| {
             let warming = self.levels_c[level] - self.levels_c[self.reference];
             let place = (realization as f64 + 0.5) / count as f64 * 2.0 - 1.0;
-            let [middle, half, change] = if measure == 0 { self.swe } else { self.dates };
+            let [middle, half, change] = if is_amount(measure) { self.swe } else { self.dates };
             let change = if measure == 2 { 0.7 * change } else { change };
             let value =
                 middle + half * place * (0.6 + 0.4 * place * place) + change * warming * (1.0 + 0.1 * place);
             let [not_gone, none] = self.undefined;
             match measure {
-                0 => value.max(0.0),
+                _ if is_amount(measure) => value.max(0.0),
                 _ if realization < none => NONE,
                 _ if realization + not_gone >= count => NOT_GONE,
                 1 => value.round(),
                 _ => value.round() + 25.0,
             }
         };
-        let basin_periods = Array3::from_shape_fn((levels, 3, count), |(l, m, r)| value(l, m, r));
-        let seasons = Seasons {
-            measures,
-            basin_years: Array4::from_shape_fn((levels, 3, count, 1), |(l, m, r, _)| value(l, m, r)),
-            band_periods: Array4::from_shape_fn((levels, 1, 3, count), |(l, _, m, r)| value(l, m, r)),
-            band_undefined: Array3::from_elem((levels, 1, 3), [0, 0]),
-            basin_periods,
+        // Three bands with 40, 100 and 160 % of the basin's amounts.
+        let in_band = |band: usize, measure: usize| {
+            if is_amount(measure) { 0.4 + 0.6 * band as f64 } else { 1.0 }
         };
-        let band = Band { lower_m: 2000.0, upper_m: 3000.0, area_km2: 40.0, elevation_m: 2500.0 };
-        let questions =
-            Questions { levels_c: self.levels_c, reference: self.reference, bands: &[band], seed: 7 };
-        Findings { years: 30, ..answer(&seasons, &questions, &Silent).unwrap() }
+        let measures_count = measures.len();
+        let seasons = Seasons {
+            basin: BasinSeasons {
+                years: Array4::from_shape_fn((levels, measures_count, count, 1), |(l, m, r, _)| {
+                    value(l, m, r)
+                }),
+                periods: Array3::from_shape_fn((levels, measures_count, count), |(l, m, r)| value(l, m, r)),
+                measures,
+            },
+            band_periods: Array4::from_shape_fn((levels, 3, measures_count, count), |(l, b, m, r)| {
+                in_band(b, m) * value(l, m, r)
+            }),
+            band_undefined: Array3::from_elem((levels, 3, measures_count), [0, 0]),
+            swe_days: self.swe_days(),
+        };
+        let bands = [2000.0, 2300.0, 2600.0].map(|lower_m| Band {
+            lower_m,
+            upper_m: lower_m + 300.0,
+            area_km2: (3100.0 - lower_m) / 20.0,
+            elevation_m: lower_m + 150.0,
+        });
+        let questions = Questions {
+            levels_c: self.levels_c,
+            reference: self.reference,
+            bands: &bands,
+            mean_change_sd_pct: 0.0,
+            seed: 7,
+        };
+        let runs = Runs { study: &seasons, temperature_held: None, other_changes: &[], refits: &[] };
+        Findings { years: 30, ..answer(&runs, &questions, &Silent).unwrap() }
+    }
+
+    /// SWE that rises for half the year to what the amounts say and falls again, a few years of it.
+    fn swe_days(&self) -> SweDays {
+        let [middle, half, change] = self.swe;
+        let bins = SweBins::up_to(middle + half);
+        let mut counts = Array3::zeros((self.levels_c.len(), COUNTED_DAYS, bins.count));
+        for (level, level_c) in self.levels_c.iter().enumerate() {
+            let highest_mm = middle + change * (level_c - self.levels_c[self.reference]);
+            for (day, year) in (0..COUNTED_DAYS).flat_map(|day| (-5..=5).map(move |year| (day, year))) {
+                let of_highest = 1.0 - (day as f64 - 180.0).abs() / 100.0;
+                let swe_mm = (of_highest * (highest_mm + half * f64::from(year) / 5.0)).max(0.0);
+                counts[[level, day, ((swe_mm / bins.width_mm).round() as usize).min(bins.count - 1)]] += 1;
+            }
+        }
+        SweDays { bins, counts }
     }
 
     pub fn draw(&self, title: &str, month: u32) -> Vec<Svg> {

@@ -1,0 +1,93 @@
+//! The runs of a study, one after another, and what they answer.
+
+use super::assemble::Ready;
+use super::failure::Failure;
+use super::progress::Progress;
+use crate::ensemble::{Halt, Plan, SweBins, Watch, run, run_basin};
+use crate::findings::{
+    Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit, Runs,
+    TIMES_ASSUMED, answer,
+};
+use crate::perturb::{TemperatureHeld, YearBlocks};
+use crate::season::Measures;
+use crate::snow::{OpenLedger, Path};
+
+/// Runs every realization under every level; the reference once more with temperatures held, and for every change of
+/// mean precipitation that stands beside the assumed one; and some realizations from each of a number of resampled
+/// records, under every level. The same streams throughout, so that all differences are paired.
+pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findings, Failure> {
+    let scenario = &ready.scenario;
+    let (warming, realizations) = (&scenario.warming, &scenario.realizations);
+    let changes: Vec<_> = warming.levels_c.iter().map(|level| warming.warming.at(*level)).collect();
+    let lanes = ready.lanes(&changes);
+    let reference_lanes = ready.lanes(&changes[warming.reference..=warming.reference]);
+    let mean_change_sd_pct = realizations.mean_change_sd_pct.unwrap_or(0.0);
+    let generator = YearBlocks {
+        record: &ready.drawn_from,
+        seed: scenario.seed,
+        years: realizations.years,
+        mean_run_years: realizations.mean_run_years,
+        mean_change_sd_pct,
+    };
+    let plan = Plan {
+        lanes: &lanes,
+        levels: changes.len(),
+        reference: warming.reference,
+        bands: ready.basin.bands.len(),
+        measures,
+        generator: &generator,
+        realizations: realizations.count,
+        path: Path::default(),
+    };
+    let times_assumed: &[f64] = if mean_change_sd_pct > 0.0 { &TIMES_ASSUMED } else { &[] };
+    let of_a_record = realizations.count.min(REALIZATIONS_OF_A_RECORD);
+    let times = times_assumed.len() as u32 + 2;
+    progress.begins(realizations.count * times + of_a_record * RESAMPLED_RECORDS);
+
+    let bins = SweBins::of_record(&lanes, &ready.drawn_from).map_err(open)?;
+    let study = run(&plan, bins, progress).map_err(halted)?;
+    let held = TemperatureHeld::new(&generator, &ready.drawn_from);
+    let of_reference = Plan { lanes: &reference_lanes, levels: 1, reference: 0, ..plan };
+    let held = run(&Plan { generator: &held, ..of_reference }, bins, progress).map_err(halted)?;
+    let mut other_changes = Vec::with_capacity(times_assumed.len());
+    for times_assumed in times_assumed.iter().copied() {
+        let mean_change_sd_pct = mean_change_sd_pct * times_assumed;
+        let generator = YearBlocks { mean_change_sd_pct, ..generator };
+        let reference =
+            run_basin(&Plan { generator: &generator, ..of_reference }, progress).map_err(halted)?;
+        other_changes.push(OtherChange { times_assumed, reference });
+    }
+    let mut refits = Vec::with_capacity(RESAMPLED_RECORDS as usize);
+    for number in 0..RESAMPLED_RECORDS {
+        let record = generator.resampled_record(number);
+        let generator = YearBlocks { record: &record, ..generator };
+        let plan = Plan { generator: &generator, realizations: of_a_record, ..plan };
+        let seasons = run_basin(&plan, progress).map_err(halted)?;
+        refits.push(Refit::of(&seasons, &warming.levels_c, warming.reference));
+    }
+
+    progress.stage("answering questions about them");
+    let runs =
+        Runs { study: &study, temperature_held: Some(&held), other_changes: &other_changes, refits: &refits };
+    let questions = Questions {
+        levels_c: &warming.levels_c,
+        reference: warming.reference,
+        bands: &ready.basin.bands,
+        mean_change_sd_pct,
+        seed: scenario.seed,
+    };
+    let findings = answer(&runs, &questions, progress).map_err(halted)?;
+    let comparisons = ready.comparisons().map_err(open)?;
+    Ok(Findings { comparisons, ..findings })
+}
+
+fn open(open: OpenLedger) -> Failure {
+    Failure::Ours(open.to_string())
+}
+
+fn halted(halt: Halt) -> Failure {
+    match halt {
+        Halt::Stopped => Failure::Interrupted,
+        Halt::Ledger(ledger) => open(ledger),
+    }
+}

@@ -1,0 +1,80 @@
+//! SWE of the basin through the water year: its median and 10-90 % range on every day, at every level.
+
+use super::quantile::quantile_by;
+use crate::ensemble::{COUNTED_DAYS, SweDays};
+use serde::Serialize;
+
+/// SWE of the basin on every day of the water year, over all years of all realizations.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct SweThroughYear {
+    /// Every value is a multiple of this, mm: SWE is kept as counts of what rounds to it, so a value is off by at most
+    /// half of it.
+    pub bin_mm: f64,
+    /// Years that are counted at each level.
+    pub years: usize,
+    /// Days counted, of all levels, on which SWE was above the highest bin and stands as that.
+    pub days_above_highest_bin: usize,
+    /// One entry a level.
+    pub levels: Vec<LevelThroughYear>,
+}
+
+/// SWE through the year at one level. The first value is of the water year's first day, as it begins; there are 365.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct LevelThroughYear {
+    /// The level, degC.
+    pub level_c: f64,
+    /// 10 % quantile of each day, mm.
+    pub q10_mm: Vec<f64>,
+    /// Median of each day, mm.
+    pub q50_mm: Vec<f64>,
+    /// 90 % quantile of each day, mm.
+    pub q90_mm: Vec<f64>,
+}
+
+impl SweThroughYear {
+    /// Quantiles of the counts, type 8 as everywhere.
+    pub(super) fn of(days: &SweDays, levels_c: &[f64]) -> Self {
+        let bins = days.bins;
+        let levels = levels_c.iter().enumerate().map(|(level, level_c)| {
+            let ranked: Vec<[f64; 3]> = (0..COUNTED_DAYS)
+                .map(|day| quantiles(days.day(level, day).iter().copied()).map(|bin| bin * bins.width_mm))
+                .collect();
+            let column = |at: usize| ranked.iter().map(|quantiles| quantiles[at]).collect();
+            LevelThroughYear { level_c: *level_c, q10_mm: column(0), q50_mm: column(1), q90_mm: column(2) }
+        });
+        let highest = days.counts.index_axis(ndarray::Axis(2), bins.count - 1);
+        Self {
+            bin_mm: bins.width_mm,
+            years: days.day(0, 0).iter().map(|count| *count as usize).sum(),
+            days_above_highest_bin: highest.iter().map(|count| *count as usize).sum(),
+            levels: levels.collect(),
+        }
+    }
+}
+
+/// The 10, 50 and 90 % quantiles of counts by bin, in bins.
+fn quantiles(counts: impl Iterator<Item = u32>) -> [f64; 3] {
+    let mut below = Vec::new();
+    let mut sum = 0;
+    for count in counts {
+        sum += count as usize;
+        below.push(sum);
+    }
+    [0.1, 0.5, 0.9].map(|p| quantile_by(sum, p, |rank| below.partition_point(|upto| *upto <= rank) as f64))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::super::{quantile, sorted};
+    use super::*;
+
+    /// Of counts, the quantiles are those of the values written out.
+    #[test]
+    fn quantiles_of_counts_equal_those_of_values() {
+        let counts = [3_u32, 0, 5, 1, 0, 0, 2];
+        let values =
+            counts.iter().enumerate().flat_map(|(bin, n)| std::iter::repeat_n(bin as f64, *n as usize));
+        let values = sorted(values);
+        assert_eq!(quantiles(counts.into_iter()), [0.1, 0.5, 0.9].map(|p| quantile(&values, p)));
+    }
+}
