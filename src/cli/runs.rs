@@ -3,14 +3,15 @@
 use super::assemble::Ready;
 use super::failure::Failure;
 use super::progress::Progress;
-use crate::ensemble::{Halt, Plan, SweBins, Watch, run, run_basin};
+use crate::ensemble::{Halt, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
     Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit, Runs,
     TIMES_ASSUMED, answer,
 };
-use crate::perturb::{TemperatureHeld, YearBlocks};
+use crate::perturb::{Generator, TemperatureHeld, YearBlocks};
 use crate::season::Measures;
 use crate::snow::{OpenLedger, Path};
+use crate::weather::Series;
 
 /// Runs every realization under every level; the reference once more with temperatures held, and for every change of
 /// mean precipitation that stands beside the assumed one; and some realizations from each of a number of resampled
@@ -42,7 +43,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let times_assumed: &[f64] = if mean_change_sd_pct > 0.0 { &TIMES_ASSUMED } else { &[] };
     let of_a_record = realizations.count.min(REALIZATIONS_OF_A_RECORD);
     let times = times_assumed.len() as u32 + 2;
-    progress.begins(realizations.count * times + of_a_record * RESAMPLED_RECORDS);
+    progress.begins(realizations.count * times + of_a_record);
 
     let bins = SweBins::of_record(&lanes, &ready.drawn_from).map_err(open)?;
     let study = run(&plan, bins, progress).map_err(halted)?;
@@ -53,18 +54,17 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     for times_assumed in times_assumed.iter().copied() {
         let mean_change_sd_pct = mean_change_sd_pct * times_assumed;
         let generator = YearBlocks { mean_change_sd_pct, ..generator };
-        let reference =
-            run_basin(&Plan { generator: &generator, ..of_reference }, progress).map_err(halted)?;
-        other_changes.push(OtherChange { times_assumed, reference });
+        let reference = run_records(&of_reference, &[&generator], progress).map_err(halted)?;
+        other_changes.extend(reference.into_iter().map(|reference| OtherChange { times_assumed, reference }));
     }
-    let mut refits = Vec::with_capacity(RESAMPLED_RECORDS as usize);
-    for number in 0..RESAMPLED_RECORDS {
-        let record = generator.resampled_record(number);
-        let generator = YearBlocks { record: &record, ..generator };
-        let plan = Plan { generator: &generator, realizations: of_a_record, ..plan };
-        let seasons = run_basin(&plan, progress).map_err(halted)?;
-        refits.push(Refit::of(&seasons, &warming.levels_c, warming.reference));
-    }
+    let records: Vec<Series> = (0..RESAMPLED_RECORDS).map(|at| generator.resampled_record(at)).collect();
+    let generators: Vec<YearBlocks<'_>> =
+        records.iter().map(|record| YearBlocks { record, ..generator }).collect();
+    let generators: Vec<&dyn Generator> = generators.iter().map(|of_record| of_record as _).collect();
+    let of_records = Plan { realizations: of_a_record, ..plan };
+    let of_records = run_records(&of_records, &generators, progress).map_err(halted)?;
+    let refit = |seasons| Refit::of(seasons, &warming.levels_c, warming.reference);
+    let refits: Vec<Refit> = of_records.iter().map(refit).collect();
 
     progress.stage("answering questions about them");
     let runs =

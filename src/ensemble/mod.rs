@@ -1,6 +1,7 @@
 //! Run many: every realization under every warming level, on as many threads as there are.
 
 mod climate;
+mod memory;
 mod plan;
 mod realization;
 mod record;
@@ -12,7 +13,7 @@ mod watch;
 pub use climate::{BandClimate, WinterMonths, band_climates};
 pub use plan::Plan;
 pub use record::{RecordYear, record_years};
-pub use run::{run, run_basin};
+pub use run::{run, run_records};
 pub use seasons::{BasinSeasons, Seasons};
 pub use swe_days::{COUNTED_DAYS, SweBins, SweDays};
 pub use watch::{Halt, Silent, Watch};

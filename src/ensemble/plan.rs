@@ -1,8 +1,8 @@
 //! The plan of a run: what is stepped, by which weather, and what is measured.
 
 use crate::perturb::Generator;
-use crate::season::Measures;
-use crate::snow::{Lanes, Path};
+use crate::season::{Measures, keeps_snow};
+use crate::snow::{Lanes, Path, YearBlock};
 
 /// What is to be run.
 #[derive(Clone, Copy)]
@@ -23,4 +23,11 @@ pub struct Plan<'a> {
     pub realizations: u32,
     /// Compiled form of the engine's row passes.
     pub path: Path,
+}
+
+impl Plan<'_> {
+    /// Whether a band of the reference kept its snow through a year.
+    pub(super) fn keeps_snow(&self, block: &YearBlock) -> bool {
+        (0..self.bands).any(|band| keeps_snow(block, self.lanes.column(self.reference, band)))
+    }
 }

@@ -1,9 +1,11 @@
 //! One realization under every level: its years are run once and measured, for basin and bands or for the basin alone.
 
+use super::memory::{Memory, Remembered};
 use super::plan::Plan;
 use super::swe_days::Tally;
 use super::watch::{Halt, Watch};
-use crate::season::{NONE, NOT_GONE, keeps_snow, period_value};
+use crate::perturb::Generator;
+use crate::season::{NONE, NOT_GONE, period_value};
 use crate::snow::{Engine, YearBlock};
 use crate::weather::Series;
 
@@ -26,6 +28,7 @@ pub(super) struct Workshop<'p> {
     weather: Series,
     means: YearBlock,
     measured: Measured,
+    memory: Memory,
 }
 
 /// Measured years, `[year][measure][column]`.
@@ -45,56 +48,79 @@ impl<'p> Workshop<'p> {
             weather: Series::default(),
             means: YearBlock::of_means(plan.lanes),
             measured: Measured::default(),
+            memory: Memory::default(),
         }
     }
 
-    /// Runs a realization and measures every column, bands and basin means.
+    /// Runs a realization from bare ground, and measures every column, bands and basin means. Where its first year leaves
+    /// perennial snow in a band of the reference, that year is run once more on the snow it left.
     pub fn run(&mut self, number: u32, tally: &Tally, watch: &dyn Watch) -> Result<Kept, Halt> {
-        let measures = self.plan.measures;
-        self.each_year(number, watch, |year, block, _, measured| {
-            tally.count(block);
-            measures.take(block, measured.year(year, block.width));
-        })?;
-        Ok(self.keep())
-    }
-
-    /// Runs a realization and measures the basin means alone, which is less work.
-    pub fn run_basin(&mut self, number: u32, watch: &dyn Watch) -> Result<BasinKept, Halt> {
-        let measures = self.plan.measures;
-        self.each_year(number, watch, |year, block, means, measured| {
-            block.copy_means(means);
-            measures.take(means, measured.year(year, means.width));
-        })?;
-        Ok(self.keep_basin(0))
-    }
-
-    /// Runs a realization from bare ground and hands each year to `look`. Where its first year leaves perennial snow in
-    /// a band of the reference, that year is run once more on the snow it left.
-    fn each_year(
-        &mut self,
-        number: u32,
-        watch: &dyn Watch,
-        mut look: impl FnMut(usize, &mut YearBlock, &mut YearBlock, &mut Measured),
-    ) -> Result<(), Halt> {
-        self.plan.generator.fill(number, &mut self.weather);
-        self.engine.restart();
-        let (lanes, reference) = (self.plan.lanes, self.plan.reference);
-        self.measured.begin(self.plan.measures.list().len(), self.weather.years.len());
-        for (year, span) in self.weather.years.iter().enumerate() {
+        let Self { plan, engine, weather, measured, .. } = self;
+        plan.generator.fill(number, weather);
+        engine.restart();
+        measured.begin(plan.measures.list().len(), weather.years.len());
+        for (year, span) in weather.years.iter().enumerate() {
             if watch.wants_stop() {
                 return Err(Halt::Stopped);
             }
-            let view = self.weather.view(span);
-            let mut block = self.engine.year(view)?;
-            let is_perennial = |block: &YearBlock| {
-                (0..self.plan.bands).any(|band| keeps_snow(block, lanes.column(reference, band)))
-            };
-            if year == 0 && is_perennial(block) {
-                block = self.engine.year(view)?;
+            let view = weather.view(span);
+            let mut block = engine.year(view)?;
+            if year == 0 && plan.keeps_snow(block) {
+                block = engine.year(view)?;
             }
-            look(year, block, &mut self.means, &mut self.measured);
+            tally.count(block);
+            plan.measures.take(block, measured.year(year, block.width));
         }
-        Ok(())
+        Ok(self.keep())
+    }
+
+    /// Runs the same realization from each of several generators, and measures the basin means alone. Years that have the
+    /// same name in two of them must have the same weather.
+    pub fn run_records(
+        &mut self,
+        number: u32,
+        generators: &[&dyn Generator],
+        watch: &dyn Watch,
+    ) -> Result<Vec<BasinKept>, Halt> {
+        self.memory.clear();
+        generators.iter().map(|generator| self.run_remembering(number, *generator, watch)).collect()
+    }
+
+    fn run_remembering(
+        &mut self,
+        number: u32,
+        generator: &dyn Generator,
+        watch: &dyn Watch,
+    ) -> Result<BasinKept, Halt> {
+        let Self { plan, engine, weather, means, measured, memory } = self;
+        generator.fill(number, weather);
+        engine.restart();
+        measured.begin(plan.measures.list().len(), weather.years.len());
+        for (year, span) in weather.years.iter().enumerate() {
+            if watch.wants_stop() {
+                return Err(Halt::Stopped);
+            }
+            let mut run = |engine: &mut Engine<'_>| {
+                let start = engine.snow();
+                let found = memory.year(span.water_year, start, || {
+                    let block = engine.year(weather.view(span))?;
+                    let is_perennial = plan.keeps_snow(block);
+                    block.copy_means(means);
+                    let mut measured = vec![0.0; plan.measures.list().len() * means.width];
+                    plan.measures.take(means, &mut measured);
+                    Ok::<_, Halt>(Remembered { measured, end: engine.snow(), is_perennial })
+                })?;
+                engine.put_snow(&found.end);
+                measured
+                    .year(year, found.measured.len() / plan.measures.list().len())
+                    .copy_from_slice(&found.measured);
+                Ok::<bool, Halt>(found.is_perennial)
+            };
+            if run(engine)? && year == 0 {
+                run(engine)?;
+            }
+        }
+        Ok(self.keep_basin(0))
     }
 
     fn keep_basin(&self, first_mean: usize) -> BasinKept {

@@ -5,6 +5,7 @@ use super::realization::Workshop;
 use super::seasons::{BasinSeasons, Seasons};
 use super::swe_days::{SweBins, Tally};
 use super::watch::{Halt, Watch};
+use crate::perturb::Generator;
 use rayon::prelude::*;
 
 /// Runs every realization under every level, on the threads of the current rayon pool, and keeps basin and bands.
@@ -21,13 +22,23 @@ pub fn run(plan: &Plan<'_>, bins: SweBins, watch: &dyn Watch) -> Result<Seasons,
     Ok(Seasons::gather(plan, kept, tally.finish()))
 }
 
-/// The same for the basin means alone: the same bits as [`run`] keeps of them, with less work.
+/// The basin means of the plan's realizations from each of several generators instead of its own: the same bits as
+/// [`run`] keeps of them, with less work. All years of one name in one realization, whichever generator made it, must have
+/// the same weather, as those of one record resampled have: what has been run is not run again.
 ///
 /// # Errors
 /// Those of [`run`].
-pub fn run_basin(plan: &Plan<'_>, watch: &dyn Watch) -> Result<BasinSeasons, Halt> {
-    let kept = each(plan, watch, |workshop, number| workshop.run_basin(number, watch))?;
-    Ok(BasinSeasons::gather(plan, kept.iter().map(|kept| kept.0.as_slice())))
+pub fn run_records(
+    plan: &Plan<'_>,
+    generators: &[&dyn Generator],
+    watch: &dyn Watch,
+) -> Result<Vec<BasinSeasons>, Halt> {
+    let kept = each(plan, watch, |workshop, number| workshop.run_records(number, generators, watch))?;
+    let of = |at: usize| {
+        let realizations: Vec<&[f64]> = kept.iter().map(|kept| kept[at].0.as_slice()).collect();
+        BasinSeasons::gather(plan, realizations.into_iter())
+    };
+    Ok((0..generators.len()).map(of).collect())
 }
 
 fn each<'p, T: Send>(

@@ -36,6 +36,10 @@ pub struct Engine<'l> {
     block: YearBlock,
 }
 
+/// Ice and liquid of every lane, to the bit.
+#[derive(Debug, Clone, PartialEq, Eq, Hash)]
+pub struct Snow(Box<[u64]>);
+
 /// Rows of the lanes' state, of the day at hand, and of the year's ledger.
 #[derive(Debug)]
 struct State {
@@ -77,6 +81,18 @@ impl<'l> Engine<'l> {
             bare_ground_rain: row(),
         };
         Self { lanes, path, state, block: YearBlock::new(lanes.width, lanes.mix_width, with_detail) }
+    }
+
+    /// The snow that is there.
+    pub fn snow(&self) -> Snow {
+        Snow(self.state.ice.iter().chain(&self.state.liquid).map(|depth_mm| depth_mm.to_bits()).collect())
+    }
+
+    /// Puts down snow that [`Self::snow`] of an engine with the same lanes gave.
+    pub fn put_snow(&mut self, snow: &Snow) {
+        for (depth_mm, bits) in self.state.ice.iter_mut().chain(&mut self.state.liquid).zip(&snow.0) {
+            *depth_mm = f64::from_bits(*bits);
+        }
     }
 
     /// Takes all snow away.

@@ -19,7 +19,7 @@ mod step;
 pub use block::{Detail, YearBlock};
 pub use catch::{GaugeMultiplier, correct_catch};
 pub use degrees::{diurnal_degrees, mean_degrees};
-pub use engine::{Engine, Path};
+pub use engine::{Engine, Path, Snow};
 pub use lanes::{LaneSpec, Lanes, ROW_MULTIPLE};
 pub use ledger::OpenLedger;
 pub use melt::{RAIN_MELT_PER_MM_C, degree_day_factor, potential_melt};

@@ -6,8 +6,8 @@ use ndarray::{Axis, Slice};
 use proptest::prelude::*;
 use rayon::ThreadPoolBuilder;
 use thawline::calendar::MonthDay;
-use thawline::ensemble::{Plan, Seasons, Silent, SweBins, run};
-use thawline::perturb::{MonthlyChange, YearBlocks};
+use thawline::ensemble::{BasinSeasons, Plan, Seasons, Silent, SweBins, run, run_records};
+use thawline::perturb::{Generator, MonthlyChange, TemperatureHeld, YearBlocks};
 use thawline::season::{Measures, SeasonSettings};
 use thawline::snow::{Lanes, Path};
 use thawline::weather::Series;
@@ -38,27 +38,31 @@ impl Study {
         }
     }
 
-    fn run(&self, threads: usize, realizations: u32, path: Path) -> Seasons {
-        let generator = YearBlocks {
-            record: &self.record,
-            seed: 20,
-            years: 3,
-            mean_run_years: 2.0,
-            mean_change_sd_pct: 5.0,
-        };
-        let plan = Plan {
+    fn generator<'r>(&self, record: &'r Series) -> YearBlocks<'r> {
+        YearBlocks { record, seed: 20, years: 3, mean_run_years: 2.0, mean_change_sd_pct: 5.0 }
+    }
+
+    fn plan<'a>(&'a self, generator: &'a dyn Generator, realizations: u32, path: Path) -> Plan<'a> {
+        Plan {
             lanes: &self.lanes,
             levels: self.levels,
             reference: 0,
             bands: self.bands,
             measures: &self.measures,
-            generator: &generator,
+            generator,
             realizations,
             path,
-        };
-        let pool = ThreadPoolBuilder::new().num_threads(threads).build().expect("threads");
+        }
+    }
+
+    fn run(&self, threads: usize, realizations: u32, path: Path) -> Seasons {
+        self.run_from(&self.generator(&self.record), threads, realizations, path)
+    }
+
+    fn run_from(&self, from: &dyn Generator, threads: usize, realizations: u32, path: Path) -> Seasons {
         let bins = SweBins::of_record(&self.lanes, &self.record).expect("a closed ledger");
-        pool.install(|| run(&plan, bins, &Silent)).expect("a closed ledger")
+        let pool = ThreadPoolBuilder::new().num_threads(threads).build().expect("threads");
+        pool.install(|| run(&self.plan(from, realizations, path), bins, &Silent)).expect("a closed ledger")
     }
 }
 
@@ -84,6 +88,66 @@ proptest! {
             prop_assert!(all_bits(&study.run(threads, 9, Path::Widest)) == one, "{threads} threads differ from one");
         }
         prop_assert!(all_bits(&study.run(2, 9, Path::Baseline)) == one, "narrow vectors differ from wide ones");
+    }
+
+    /// Resampled records give what each gives when it is run by itself: nothing that is remembered differs from what would
+    /// have been computed, perennial snow and snow over the year's end included.
+    #[test]
+    fn remembered_years_are_the_same_years(mut scenario in scenarios(), mean_c in -25.0..15.0) {
+        scenario.climate.mean_c = mean_c;
+        let study = Study::of(&scenario, &scenario.changes());
+        let own = study.generator(&study.record);
+        let records: Vec<Series> = (0..3).map(|number| own.resampled_record(number)).collect();
+        let generators: Vec<YearBlocks<'_>> = records.iter().map(|record| study.generator(record)).collect();
+        let each: Vec<&dyn Generator> = generators.iter().map(|generator| generator as _).collect();
+        let found = run_records(&study.plan(&own, 5, Path::Widest), &each, &Silent).expect("a closed ledger");
+        for (generator, found) in each.into_iter().zip(found) {
+            let alone: BasinSeasons = study.run_from(generator, 2, 5, Path::Widest).basin;
+            prop_assert_eq!(bits(&alone.years), bits(&found.years));
+            prop_assert_eq!(bits(&alone.periods), bits(&found.periods));
+        }
+    }
+
+    /// Held temperatures have the record's mean in every month, and nothing else of the weather changes. 1e-9 is the
+    /// rounding of a mean over some hundred days.
+    #[test]
+    fn held_temperatures_are_the_records_month_by_month(scenario in scenarios(), realization in 0_u32..50) {
+        let study = Study::of(&scenario, &scenario.changes());
+        let own = study.generator(&study.record);
+        let (mut held, mut free) = (Series::default(), Series::default());
+        TemperatureHeld::new(&own, &study.record).fill(realization, &mut held);
+        own.fill(realization, &mut free);
+        let mean_c = |series: &Series, month: u8| {
+            let days = series.mean_c.iter().zip(&series.month).filter(|(_, of)| **of == month);
+            days.clone().map(|(mean_c, _)| mean_c).sum::<f64>() / days.count() as f64
+        };
+        for month in 0..12 {
+            prop_assert!((mean_c(&held, month) - mean_c(&study.record, month)).abs() < 1e-9, "month {month}");
+            let days = held.mean_c.iter().zip(&free.mean_c).zip(&held.month).filter(|(_, of)| **of == month);
+            let shifts: Vec<f64> = days.map(|((held, free), _)| held - free).collect();
+            prop_assert!(shifts.iter().all(|shift| (shift - shifts[0]).abs() < 1e-9), "one shift for month {month}");
+        }
+        prop_assert_eq!(bits(&held.precipitation_mm), bits(&free.precipitation_mm));
+        prop_assert_eq!(bits(&held.half_range_c), bits(&free.half_range_c));
+        prop_assert_eq!(&held.years, &free.years);
+    }
+
+    /// SWE is counted once a day, year and level, and a count's bin is the SWE to within half a bin.
+    #[test]
+    fn swe_is_counted_on_every_day(scenario in scenarios()) {
+        let seasons = Study::of(&scenario, &scenario.changes()).run(2, 4, Path::Widest);
+        let (days, width_mm) = (&seasons.swe_days, seasons.swe_days.bins.width_mm);
+        for level in 0..seasons.basin.years.len_of(Axis(0)) {
+            for day in [0, 100, 364] {
+                prop_assert_eq!(days.day(level, day).sum(), 12);
+            }
+            // The first survey date is the first day.
+            let counted = days.day(level, 0);
+            let is_within = counted[days.bins.count - 1] == 0;
+            let in_bins = counted.iter().enumerate().map(|(bin, count)| bin as f64 * f64::from(*count)).sum::<f64>();
+            let surveyed_mm = seasons.basin.years.index_axis(Axis(0), level).index_axis(Axis(0), 0).sum();
+            prop_assert!(!is_within || (in_bins * width_mm - surveyed_mm).abs() <= 6.0 * width_mm + 1e-9);
+        }
     }
 
     /// A realization does not depend on how many others are run.
