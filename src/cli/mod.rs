@@ -2,6 +2,7 @@
 
 mod arguments;
 mod assemble;
+mod break_even;
 mod check;
 mod daily;
 mod failure;

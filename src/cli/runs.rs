@@ -1,6 +1,7 @@
 //! The runs of a study, one after another, and what they answer.
 
 use super::assemble::Ready;
+use super::break_even::break_even;
 use super::failure::Failure;
 use super::progress::Progress;
 use crate::ensemble::{Halt, Plan, SweBins, Watch, run, run_records};
@@ -66,6 +67,8 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let refit = |seasons| Refit::of(seasons, &warming.levels_c, warming.reference);
     let refits: Vec<Refit> = of_records.iter().map(refit).collect();
 
+    let break_even = break_even(ready, &plan, &changes, generator, &Quiet(progress)).map_err(halted)?;
+
     progress.stage("answering questions about them");
     let runs =
         Runs { study: &study, temperature_held: Some(&held), other_changes: &other_changes, refits: &refits };
@@ -78,7 +81,16 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     };
     let findings = answer(&runs, &questions, progress).map_err(halted)?;
     let comparisons = ready.comparisons().map_err(open)?;
-    Ok(Findings { comparisons, ..findings })
+    Ok(Findings { break_even: Some(break_even), comparisons, ..findings })
+}
+
+/// Watches for the wish to stop alone: runs that are too many and too short to count on a bar.
+struct Quiet<'p>(&'p Progress);
+
+impl Watch for Quiet<'_> {
+    fn wants_stop(&self) -> bool {
+        self.0.wants_stop()
+    }
 }
 
 fn open(open: OpenLedger) -> Failure {

@@ -82,7 +82,9 @@ impl<'p> Workshop<'p> {
         generators: &[&dyn Generator],
         watch: &dyn Watch,
     ) -> Result<Vec<BasinKept>, Halt> {
-        self.memory.clear();
+        if !generators.iter().all(|generator| generator.repeats_years()) {
+            self.memory.clear();
+        }
         generators.iter().map(|generator| self.run_remembering(number, *generator, watch)).collect()
     }
 

@@ -24,7 +24,8 @@ pub fn run(plan: &Plan<'_>, bins: SweBins, watch: &dyn Watch) -> Result<Seasons,
 
 /// The basin means of the plan's realizations from each of several generators instead of its own: the same bits as
 /// [`run`] keeps of them, with less work. All years of one name in one realization, whichever generator made it, must have
-/// the same weather, as those of one record resampled have: what has been run is not run again.
+/// the same weather, as those of one record resampled have: what has been run is not run again. Where all generators
+/// say that years repeat, that holds for all realizations together.
 ///
 /// # Errors
 /// Those of [`run`].

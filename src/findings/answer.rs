@@ -1,5 +1,6 @@
 //! Puts every question to a study's runs, measure by measure, for the basin and for each band.
 
+use super::break_even::BreakEven;
 use super::measure::{Asked, Found, MeasureFindings};
 use super::record_range::{RecordRange, Refit};
 use super::resample::Resamples;
@@ -63,6 +64,9 @@ pub struct Findings {
     pub years: usize,
     /// SWE of the basin through the water year.
     pub swe_through_year: SweThroughYear,
+    /// How much more precipitation would make up for the warming. Found by runs of its own: whoever runs them adds it.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub break_even: Option<BreakEven>,
     /// Of the basin mean, one entry a measure, the headline's first.
     pub basin: Vec<MeasureFindings>,
     /// Of each band, from the lowest.
@@ -116,6 +120,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         realizations,
         years,
         swe_through_year: SweThroughYear::of(&study.swe_days, questions.levels_c),
+        break_even: None,
         basin,
         bands: bands.collect(),
         comparisons: Vec::new(),

@@ -3,6 +3,7 @@
 //! Everything that a figure draws or a sentence says about an ensemble stands in [`Findings`] and nowhere else.
 
 mod answer;
+mod break_even;
 mod chance;
 mod crossing;
 mod distribution;
@@ -20,6 +21,7 @@ mod variance;
 mod yardstick;
 
 pub use answer::{BandFindings, Findings, OtherChange, Questions, Runs, answer};
+pub use break_even::{BREAK_EVEN_BRACKET_PCT, BreakEven, BreakEvenLevel, Reached, break_even_pct};
 pub use chance::{Chance, Chances};
 pub use crossing::{Crossing, CrossingRange, crossing};
 pub use distribution::{DOTS, Distribution};

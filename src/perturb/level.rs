@@ -74,6 +74,12 @@ pub struct MonthlyChange {
 impl MonthlyChange {
     /// No change.
     pub const NONE: Self = Self { tmin_c: [0.0; 12], tmax_c: [0.0; 12], precipitation_factor: [1.0; 12] };
+
+    /// The same with all precipitation changed by so many percent more.
+    pub fn with_precipitation(&self, pct: f64) -> Self {
+        let precipitation_factor = self.precipitation_factor.map(|factor| factor * (1.0 + pct / 100.0));
+        Self { precipitation_factor, ..self.clone() }
+    }
 }
 
 impl Warming {

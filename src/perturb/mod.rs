@@ -21,4 +21,10 @@ pub trait Generator: Sync {
     /// Fills `into` with realization number `realization`, the same for every warming level. Its values depend on the
     /// seed and that number alone.
     fn fill(&self, realization: u32, into: &mut Series);
+
+    /// Whether years of one name have the same weather in every realization, so that what has been run need not be run
+    /// again.
+    fn repeats_years(&self) -> bool {
+        false
+    }
 }

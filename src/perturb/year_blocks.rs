@@ -37,6 +37,11 @@ impl Generator for YearBlocks<'_> {
             *precipitation *= factor;
         }
     }
+
+    /// Where no change of mean precipitation is assumed, years are the record's own.
+    fn repeats_years(&self) -> bool {
+        self.mean_change_sd_pct == 0.0
+    }
 }
 
 impl YearBlocks<'_> {

@@ -1,0 +1,108 @@
+//! Break-even precipitation by root finding on runs, and how wet periods have been.
+
+use super::assemble::Ready;
+use crate::baseline::Seasons as SeasonsOf;
+use crate::ensemble::{Halt, Plan, Watch, run_records};
+use crate::findings::{BreakEven, BreakEvenLevel, Reached, break_even_pct, quantile, sorted};
+use crate::perturb::{Generator, MonthlyChange, YearBlocks};
+use crate::weather::Series;
+
+/// Realizations that are run for it at most, the first of the study.
+const BREAK_EVEN_REALIZATIONS: u32 = 100;
+
+/// Finds the break-even precipitation of the headline measure at every level: the same realizations, no change of mean
+/// precipitation assumed in them, under each level with one more factor on all precipitation.
+///
+/// # Errors
+/// Those of a run.
+pub(super) fn break_even(
+    ready: &Ready,
+    plan: &Plan<'_>,
+    changes: &[MonthlyChange],
+    generator: YearBlocks<'_>,
+    watch: &dyn Watch,
+) -> Result<BreakEven, Halt> {
+    let all = plan.realizations;
+    let unchanged = YearBlocks { mean_change_sd_pct: 0.0, ..generator };
+    let plan = Plan { realizations: plan.realizations.min(BREAK_EVEN_REALIZATIONS), ..*plan };
+    let medians = |pct: &[f64]| {
+        let mut scaled: Vec<MonthlyChange> =
+            changes.iter().zip(pct).map(|(change, pct)| change.with_precipitation(*pct)).collect();
+        // The reference stays: it is what is to be regained, and decides about perennial snow.
+        scaled[plan.reference] = changes[plan.reference].clone();
+        let lanes = ready.lanes(&scaled);
+        let seasons = run_records(&Plan { lanes: &lanes, ..plan }, &[&unchanged], watch)?;
+        let of = |level: usize| {
+            let periods = seasons[0].periods.index_axis(ndarray::Axis(0), level);
+            quantile(&sorted(periods.row(0).iter().copied()), 0.5)
+        };
+        Ok::<_, Halt>((0..changes.len()).map(of).collect::<Vec<f64>>())
+    };
+    let reference_median = medians(&vec![0.0; changes.len()])?[plan.reference];
+    let roots = break_even_pct(changes.len(), |pct| {
+        Ok::<_, Halt>(medians(pct)?.into_iter().map(|median| median - reference_median).collect())
+    })?;
+    let survey = ready.scenario.season.survey_dates[0];
+    let wetness = Wetness::of(&generator, all, survey, watch)?;
+    let levels_c = &ready.scenario.warming.levels_c;
+    let levels = levels_c.iter().zip(roots).enumerate().filter(|(level, _)| *level != plan.reference);
+    Ok(BreakEven {
+        realizations: plan.realizations as usize,
+        reference_median,
+        levels: levels.map(|(_, (level_c, pct))| wetness.level(*level_c, pct)).collect(),
+        reached: wetness.reached(generator.years),
+    })
+}
+
+/// Mean cool-season precipitation of the record's and the realizations' periods, percent above the record's mean.
+struct Wetness {
+    realizations_pct: Vec<f64>,
+    record_wettest_pct: Option<f64>,
+}
+
+impl Wetness {
+    fn of(
+        generator: &YearBlocks<'_>,
+        realizations: u32,
+        survey: crate::calendar::MonthDay,
+        watch: &dyn Watch,
+    ) -> Result<Self, Halt> {
+        let mean = |values: &[(i32, f64)]| values.iter().map(|(_, mm)| mm).sum::<f64>() / values.len() as f64;
+        let cool = |series: &Series| SeasonsOf::of(series, survey).cool.precipitation_mm;
+        let record = cool(generator.record);
+        let record_mm = mean(&record);
+        let above = |values: &[(i32, f64)]| 100.0 * (mean(values) / record_mm - 1.0);
+        let periods = record.windows(generator.years);
+        let mut series = Series::default();
+        let mut realizations_pct = Vec::with_capacity(realizations as usize);
+        for number in 0..realizations {
+            if watch.wants_stop() {
+                return Err(Halt::Stopped);
+            }
+            generator.fill(number, &mut series);
+            realizations_pct.push(above(&cool(&series)));
+        }
+        Ok(Self { realizations_pct, record_wettest_pct: periods.map(above).max_by(f64::total_cmp) })
+    }
+
+    fn level(&self, level_c: f64, precipitation_change_pct: Option<f64>) -> BreakEvenLevel {
+        let reached = |pct: f64| self.realizations_pct.iter().filter(|wetness| **wetness >= pct).count();
+        BreakEvenLevel {
+            level_c,
+            precipitation_change_pct,
+            realizations_that_reached: precipitation_change_pct.map_or(0, reached),
+            record_reached: self
+                .record_wettest_pct
+                .map(|wettest| precipitation_change_pct.is_some_and(|needed| wettest >= needed)),
+        }
+    }
+
+    fn reached(&self, years: usize) -> Reached {
+        Reached {
+            years,
+            record_wettest_pct: self.record_wettest_pct,
+            realizations_wettest_pct: self.realizations_pct.iter().copied().fold(f64::NEG_INFINITY, f64::max),
+            realizations: self.realizations_pct.len(),
+        }
+    }
+}

@@ -1,0 +1,157 @@
+//! Break-even precipitation: how much more of it would make up for a warming, and was so much ever there?
+
+use serde::Serialize;
+
+/// The least and the most change of precipitation that is tried, percent.
+pub const BREAK_EVEN_BRACKET_PCT: [f64; 2] = [-50.0, 100.0];
+/// Steps at which the bracket is scanned for a change of sign, percent.
+const SCAN_PCT: f64 = 10.0;
+/// A root is known to this, percent.
+const PRECISION_PCT: f64 = 0.01;
+
+/// Break-even precipitation of the headline measure.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct BreakEven {
+    /// Realizations that were run; no change of mean precipitation is assumed in them.
+    pub realizations: usize,
+    /// Their median period value at the reference, which is to be regained.
+    pub reference_median: f64,
+    /// One entry a level but the reference.
+    pub levels: Vec<BreakEvenLevel>,
+    /// How wet periods have been.
+    pub reached: Reached,
+}
+
+/// Break-even precipitation at one level.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct BreakEvenLevel {
+    /// The level, degC.
+    pub level_c: f64,
+    /// The change of all precipitation at which the median is back at the reference's, percent; none within the bracket
+    /// where nothing stands.
+    pub precipitation_change_pct: Option<f64>,
+    /// Realizations of the study whose mean cool-season precipitation reached it, by chance and by the assumed change of
+    /// mean precipitation; 0 where there is no break-even.
+    pub realizations_that_reached: usize,
+    /// Whether a period of the record reached it; nothing where it has fewer usable years.
+    pub record_reached: Option<bool>,
+}
+
+/// Mean cool-season precipitation of periods as long as a realization's, as a percentage above or below the record's mean.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct Reached {
+    /// Years of a period.
+    pub years: usize,
+    /// The wettest of the record's periods, each of so many of its usable years in order; nothing where it has fewer.
+    pub record_wettest_pct: Option<f64>,
+    /// The wettest realization.
+    pub realizations_wettest_pct: f64,
+    /// Realizations that were looked at: all of the study's.
+    pub realizations: usize,
+}
+
+/// For each level the root nearest 0 of `excess`: the median at a change of precipitation less the reference's median.
+///
+/// `excess` takes a change for each level, percent, and gives the excess of each; it is called some 30 times. The bracket
+/// of -50 to +100 % is scanned in steps of 10, and the sign change nearest 0 is halved until it is known to 0.01 %. Of two
+/// roots within one step none is found. An excess of exactly 0 is a root; a level without an excess has none.
+///
+/// # Errors
+/// Those of `excess`.
+pub fn break_even_pct<E>(
+    levels: usize,
+    mut excess: impl FnMut(&[f64]) -> Result<Vec<f64>, E>,
+) -> Result<Vec<Option<f64>>, E> {
+    let steps = ((BREAK_EVEN_BRACKET_PCT[1] - BREAK_EVEN_BRACKET_PCT[0]) / SCAN_PCT) as usize;
+    let scanned: Vec<f64> =
+        (0..=steps).map(|step| BREAK_EVEN_BRACKET_PCT[0] + SCAN_PCT * step as f64).collect();
+    let found = scanned.iter().map(|pct| excess(&vec![*pct; levels])).collect::<Result<Vec<_>, E>>()?;
+    let mut brackets: Vec<Option<Bracket>> = (0..levels)
+        .map(|level| {
+            let ends = scanned.windows(2).zip(found.windows(2));
+            let brackets = ends.filter_map(|(pct, excess)| {
+                Bracket::new([pct[0], pct[1]], [excess[0][level], excess[1][level]])
+            });
+            brackets.min_by(|a, b| a.distance().total_cmp(&b.distance()))
+        })
+        .collect();
+    while brackets.iter().flatten().any(|bracket| bracket.width() > PRECISION_PCT) {
+        let middles: Vec<f64> = brackets.iter().map(|of| of.map_or(0.0, |of| of.middle())).collect();
+        for (bracket, excess) in brackets.iter_mut().zip(excess(&middles)?) {
+            *bracket = bracket.map(|of| of.halved(excess));
+        }
+    }
+    Ok(brackets.into_iter().map(|bracket| bracket.map(|of| of.middle())).collect())
+}
+
+/// Two changes between which the excess changes its sign.
+#[derive(Debug, Clone, Copy)]
+struct Bracket {
+    pct: [f64; 2],
+    is_below: [bool; 2],
+}
+
+impl Bracket {
+    fn new(pct: [f64; 2], excess: [f64; 2]) -> Option<Self> {
+        if let Some(root) = (0..2).find(|end| excess[*end] == 0.0) {
+            return Some(Self { pct: [pct[root]; 2], is_below: [true, false] });
+        }
+        let is_below = excess.map(|excess| excess < 0.0);
+        let has_root = excess.iter().all(|excess| excess.is_finite()) && is_below[0] != is_below[1];
+        has_root.then_some(Self { pct, is_below })
+    }
+
+    fn width(&self) -> f64 {
+        self.pct[1] - self.pct[0]
+    }
+
+    fn middle(&self) -> f64 {
+        f64::midpoint(self.pct[0], self.pct[1])
+    }
+
+    /// How far from 0 its root may lie at least.
+    fn distance(&self) -> f64 {
+        if self.pct[0] < 0.0 && self.pct[1] > 0.0 { 0.0 } else { self.pct[0].abs().min(self.pct[1].abs()) }
+    }
+
+    fn halved(self, excess: f64) -> Self {
+        let middle = self.middle();
+        if (excess < 0.0) == self.is_below[0] {
+            Self { pct: [middle, self.pct[1]], ..self }
+        } else {
+            Self { pct: [self.pct[0], middle], ..self }
+        }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use std::convert::Infallible;
+
+    fn roots(excess: impl Fn(usize, f64) -> f64, levels: usize) -> Vec<Option<f64>> {
+        let all = |pct: &[f64]| {
+            Ok::<_, Infallible>(pct.iter().enumerate().map(|(level, pct)| excess(level, *pct)).collect())
+        };
+        break_even_pct(levels, all).unwrap()
+    }
+
+    /// Functions whose roots are known: a line, one that never comes back, one below 0, a root at 0, and a parabola with
+    /// roots at -20 and +35, of which the nearer is taken. 0.01 is the precision that the method asks for.
+    #[test]
+    fn the_root_nearest_zero_is_found_to_a_hundredth() {
+        let excess = |level: usize, pct: f64| match level {
+            0 => 3.0 * (pct - 23.456),
+            1 => -1.0 - pct / 1000.0,
+            2 => pct + 7.654,
+            3 => pct,
+            _ => (pct + 20.0) * (pct - 35.0) - 1e-9,
+        };
+        let found = roots(excess, 5);
+        for (level, expected) in [(0, 23.456), (2, -7.654), (3, 0.0), (4, -20.0)] {
+            assert!((found[level].unwrap() - expected).abs() <= 0.01, "{level}: {found:?}");
+        }
+        assert_eq!(found[1], None, "none up to +100 %");
+        assert_eq!(roots(|_, _| f64::NEG_INFINITY, 1), [None], "no excess, no root");
+    }
+}
