@@ -24,6 +24,10 @@ pub struct YearBlock {
     pub outflow_mm: Vec<f64>,
     /// Rain on bare ground, mm.
     pub bare_ground_rain_mm: Vec<f64>,
+    /// Rain, mm.
+    pub rain_mm: Vec<f64>,
+    /// Snowfall, mm.
+    pub snow_mm: Vec<f64>,
     /// Everything else a day has, where it was asked for.
     pub detail: Option<Detail>,
 }
@@ -35,10 +39,6 @@ pub struct Detail {
     pub width: usize,
     /// Daily mean temperature, degC.
     pub mean_c: Vec<f64>,
-    /// Rain, mm.
-    pub rain_mm: Vec<f64>,
-    /// Snowfall, mm.
-    pub snow_mm: Vec<f64>,
     /// Melt, mm.
     pub melt_mm: Vec<f64>,
     /// Refreezing, mm.
@@ -66,11 +66,11 @@ impl YearBlock {
             net_melt_mm: rows(LONGEST_YEAR, width),
             outflow_mm: rows(LONGEST_YEAR, width),
             bare_ground_rain_mm: rows(LONGEST_YEAR, width),
+            rain_mm: rows(LONGEST_YEAR, width),
+            snow_mm: rows(LONGEST_YEAR, width),
             detail: with_detail.then(|| Detail {
                 width: lane_width,
                 mean_c: lane_rows(),
-                rain_mm: lane_rows(),
-                snow_mm: lane_rows(),
                 melt_mm: lane_rows(),
                 refreeze_mm: lane_rows(),
                 ice_mm: lane_rows(),

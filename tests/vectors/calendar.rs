@@ -110,6 +110,8 @@ fn still_year(swe_mm: Vec<f64>) -> YearBlock {
         net_melt_mm: vec![0.0; days],
         outflow_mm: vec![0.0; days],
         bare_ground_rain_mm: vec![0.0; days],
+        rain_mm: vec![0.0; days],
+        snow_mm: vec![0.0; days],
         detail: None,
     }
 }
