@@ -11,7 +11,7 @@ use super::variance::{TwoWay, VarianceShares};
 use crate::basin::Band;
 use crate::ensemble::{Halt, Seasons, Watch};
 use crate::fit::Comparison;
-use crate::season::{Kind, Measure, Place};
+use crate::season::{Measure, Place};
 use ndarray::{ArrayView2, Axis};
 use rayon::prelude::*;
 use serde::Serialize;
@@ -87,7 +87,7 @@ pub struct LevelFindings {
     /// Single years of all realizations; for the basin alone.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub single_years: Option<Distribution>,
-    /// Years with none and years whose snow never went, over all realizations.
+    /// Years with none, and years whose snow never went or whose volume never came, over all realizations.
     pub years_undefined: [usize; 2],
     /// Paired change from the reference.
     pub shift: Option<Shift>,
@@ -245,13 +245,13 @@ impl Asked<'_> {
         LevelFindings {
             level_c,
             periods: if self.years.is_some() {
-                Distribution::with_dots(self.periods.row(level).iter().copied())
+                Distribution::with_dots(self.measure.kind, self.periods.row(level).iter().copied())
             } else {
-                Distribution::of(self.periods.row(level).iter().copied())
+                Distribution::of(self.measure.kind, self.periods.row(level).iter().copied())
             },
-            single_years: self
-                .years
-                .map(|years| Distribution::of(years.index_axis(Axis(0), level).iter().copied())),
+            single_years: self.years.map(|years| {
+                Distribution::of(self.measure.kind, years.index_axis(Axis(0), level).iter().copied())
+            }),
             years_undefined: self.undefined[level],
             shift: None,
             percent_change: None,
@@ -284,10 +284,7 @@ impl Asked<'_> {
             .and_then(|spread| signal_to_spread(median, &spread, &shifts, &reference.spreads));
         let found = LevelFindings {
             shift: Some(shift),
-            percent_change: match self.measure.kind {
-                Kind::AmountMm => percent_change(median, reference.median),
-                Kind::DayOfWaterYear => None,
-            },
+            percent_change: percent_change(self.measure.kind, median, reference.median),
             signal_to_spread: ratio.as_ref().map(|(ratio, _)| *ratio),
             signal_to_noise: Some(signal_to_noise(&reference.periods, &warmed)),
             period_variance_shares: TwoWay::of(&[&reference.periods, &warmed])

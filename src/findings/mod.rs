@@ -19,6 +19,6 @@ pub use crossing::{Crossing, CrossingRange, crossing};
 pub use distribution::{DOTS, Distribution};
 pub use quantile::{quantile, sorted};
 pub use resample::{Estimate, Resamples};
-pub use shift::{LEAST_REFERENCE_MM, Shift, percent_change};
+pub use shift::{Shift, percent_change};
 pub use spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
 pub use variance::{TwoWay, VarianceShares};

@@ -2,15 +2,13 @@
 
 use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Ranked, Resamples};
+use crate::season::Kind;
 use serde::Serialize;
-
-/// No percentage is given of a reference median below this, mm.
-pub const LEAST_REFERENCE_MM: f64 = 10.0;
 
 /// The paired change from the reference to a level over realizations.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct Shift {
-    /// Median of the paired changes, mm or days, with its Monte Carlo error.
+    /// Median of the paired changes, in the unit of the measure, with its Monte Carlo error.
     pub median: Estimate,
     /// Their 5 % quantile.
     pub q05: f64,
@@ -51,7 +49,9 @@ impl Shift {
     }
 }
 
-/// `100 * median change / median reference`; nothing where the reference is below 10 mm.
-pub fn percent_change(median_change_mm: f64, median_reference_mm: f64) -> Option<f64> {
-    (median_reference_mm >= LEAST_REFERENCE_MM).then(|| 100.0 * median_change_mm / median_reference_mm)
+/// `100 * median change / median reference`; nothing where the reference is below the least of its kind, or where no
+/// percentage is taken of the kind.
+pub fn percent_change(kind: Kind, median_change: f64, median_reference: f64) -> Option<f64> {
+    let least = kind.least_reference()?;
+    (median_reference >= least).then(|| 100.0 * median_change / median_reference)
 }

@@ -39,6 +39,7 @@ impl Study<'_> {
             title: title.to_owned(),
             kind,
             place: Place::BandsAndBasin,
+            is_volume: false,
         };
         let measures = vec![
             measure("swe_04_01_mm", "1 April SWE", Kind::AmountMm),
