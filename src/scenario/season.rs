@@ -62,15 +62,16 @@ fn read_befores(
     starts: Option<MonthDay>,
     usual: [&str; 2],
 ) -> Option<Vec<MonthDay>> {
+    let usual = usual.into_iter().filter_map(MonthDay::parse).filter(|day| Some(*day) != starts);
+    let usual: Vec<MonthDay> = usual.collect();
+    let words: Vec<String> = usual.iter().map(|day| format!("\"{day}\"")).collect();
+    let usual_words = format!("[{}]", words.join(", "));
     let Some(texts) = section.texts(key) else {
         if section.has(key) {
             return None;
         }
-        let days = usual.into_iter().filter_map(MonthDay::parse).filter(|day| Some(*day) != starts);
-        let days: Vec<MonthDay> = days.collect();
-        let words: Vec<String> = days.iter().map(|day| format!("\"{day}\"")).collect();
-        section.default(key, format!("[{}]", words.join(", ")));
-        return Some(days);
+        section.default(key, usual_words);
+        return Some(usual);
     };
     let mut days = Vec::with_capacity(texts.len());
     for (at, text) in texts.iter().enumerate() {
@@ -88,7 +89,7 @@ fn read_befores(
             section.path_of(&place),
             found,
             "a day after the water year's first, each once",
-            format!("take it out, or write another: {key} = [\"{}\"]; [] for none", usual[0]),
+            format!("take it out, or write another day: usual is {key} = {usual_words}"),
         ));
     }
     (days.len() == texts.len()).then_some(days)
