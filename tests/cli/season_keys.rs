@@ -31,7 +31,77 @@ fn faults_of_days_and_volumes() {
     ]
     .map(refused)
     .join("\n");
-    insta::assert_snapshot!(said, @"");
+    insta::assert_snapshot!(said, @r#"
+error: season.outflow_before[1]: 04-01 twice
+  --> scenario.toml:18:28
+   |
+18 | outflow_before = ["04-01", "04-01"]
+   |                            ^^^^^^^ expected a day after the water year's first, each once
+   |
+   = help: take it out, or write another day: usual is outflow_before = ["04-01", "05-01"]
+
+1 fault; nothing was run
+
+error: season.outflow_before[0]: 10-01, on which the water year starts
+  --> scenario.toml:18:19
+   |
+18 | outflow_before = ["10-01"]
+   |                   ^^^^^^^ expected a day after the water year's first, each once
+   |
+   = help: take it out, or write another day: usual is outflow_before = ["04-01", "05-01"]
+
+1 fault; nothing was run
+
+error: season.melt_shares_before[0]: "02-29"
+  --> scenario.toml:18:23
+   |
+18 | melt_shares_before = ["02-29"]
+   |                       ^^^^^^^ expected a day that every year has, as "MM-DD"
+   |
+   = help: write 1 April as "04-01"
+
+1 fault; nothing was run
+
+error: season.melt_shares_before: the text "04-01"
+  --> scenario.toml:18:22
+   |
+18 | melt_shares_before = "04-01"
+   |                      ^^^^^^^ expected a list of texts in quotes
+   |
+   = help: write melt_shares_before = ["..."]
+
+1 fault; nothing was run
+
+error: season.arrival_volume_hm3: 0
+  --> scenario.toml:18:22
+   |
+18 | arrival_volume_hm3 = 0
+   |                      ^ expected a volume above 0 hm3
+   |
+   = help: state the water to wait for, in million cubic metres: a thousand acre-feet are 1.23348 hm3
+
+1 fault; nothing was run
+
+error: season.arrival_volume_hm3: the text "50"
+  --> scenario.toml:18:22
+   |
+18 | arrival_volume_hm3 = "50"
+   |                      ^^^^ expected a number
+   |
+   = help: take the quotes away: arrival_volume_hm3 = 50
+
+1 fault; nothing was run
+
+error: 'season.arrival_volume_acre_feet', which is not a key of a scenario
+  --> scenario.toml:18:1
+   |
+18 | arrival_volume_acre_feet = 50000
+   | ^^^^^^^^^^^^^^^^^^^^^^^^ expected one of: water_year_starts, survey_dates, volume_windows, outflow_before, melt_shares_before, arrival_volume_hm3
+   |
+   = help: take it out, or check its table
+
+1 fault; nothing was run
+"#);
 }
 
 /// The usual days follow the hemisphere and leave out the first day of the water year, before which nothing comes; an empty
