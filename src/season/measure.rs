@@ -46,7 +46,7 @@ impl Measure {
     }
 
     /// The same, told as a volume, too.
-    pub(super) fn as_volume(self) -> Self {
+    pub(super) fn told_as_volume(self) -> Self {
         Self { is_volume: true, ..self }
     }
 }

@@ -56,7 +56,7 @@ pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
         let [name, title] = part.words();
         list.extend(WATERS.map(|[water, words]| {
             let name = format!("{water}_{name}_mm");
-            Measure::new(Kind::AmountMm, name, format!("{words}{title}")).as_volume()
+            Measure::new(Kind::AmountMm, name, format!("{words}{title}")).told_as_volume()
         }));
     }
     for (name, title) in [("1_day", "a day"), ("3_days", "3 days in succession")] {

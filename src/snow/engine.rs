@@ -162,6 +162,7 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
             block.bare_ground_rain_mm[row.clone()].split_at_mut(width);
         let (rain, mean_rain) = block.rain_mm[row.clone()].split_at_mut(width);
         let (snow, mean_snow) = block.snow_mm[row].split_at_mut(width);
+        let mut fallen = Fallen { rain, snow };
         let with_snow = first_with_any(swe);
         let month = usize::from(weather.month[day]) * width;
         let month = month..month + width;
@@ -173,26 +174,25 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
         let mut from = with_snow;
         if is_wet {
             let share = &lanes.precipitation_factor[month.clone()];
-            let fallen = Fallen { rain, snow };
             match lanes.phase {
                 PhaseRule::Linear { .. } => {
-                    split(state, lanes, precipitation_mm, share, fallen, linear_snow_fraction);
+                    split(state, lanes, precipitation_mm, share, &mut fallen, linear_snow_fraction);
                 }
                 PhaseRule::Step { .. } => {
-                    split(state, lanes, precipitation_mm, share, fallen, |mean, warm, _| {
+                    split(state, lanes, precipitation_mm, share, &mut fallen, |mean, warm, _| {
                         step_snow_fraction(mean, warm)
                     });
                 }
                 PhaseRule::Tanh => {
-                    split(state, lanes, precipitation_mm, share, fallen, tanh_snow_fraction);
+                    split(state, lanes, precipitation_mm, share, &mut fallen, tanh_snow_fraction);
                 }
             }
-            from = first_with_any(&snow[..with_snow]);
-            bare_rain_row(&mut state.bare_ground_rain, &rain[..from], bare_ground_rain);
-            lanes.mix_row(rain, 0, mean_rain);
-            lanes.mix_row(snow, from, mean_snow);
+            from = first_with_any(&fallen.snow[..with_snow]);
+            bare_rain_row(&mut state.bare_ground_rain, &fallen.rain[..from], bare_ground_rain);
+            lanes.mix_row(fallen.rain, 0, mean_rain);
+            lanes.mix_row(fallen.snow, from, mean_snow);
         } else {
-            for row in [&mut *bare_ground_rain, &mut *rain, mean_rain, &mut *snow, mean_snow] {
+            for row in [&mut *bare_ground_rain, &mut *fallen.rain, mean_rain, &mut *fallen.snow, mean_snow] {
                 row.fill(0.0);
             }
         }
@@ -210,14 +210,14 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
                 state.melt[..from].fill(0.0);
                 state.refreeze[..from].fill(0.0);
                 if is_wet {
-                    store::<true, true>(state, lanes, from, factor, Fallen { rain, snow }, out);
+                    store::<true, true>(state, lanes, from, factor, &fallen, out);
                 } else {
-                    store::<false, true>(state, lanes, from, factor, Fallen { rain, snow }, out);
+                    store::<false, true>(state, lanes, from, factor, &fallen, out);
                 }
                 detail.keep(day, state);
             }
-            (None, true) => store::<true, false>(state, lanes, from, factor, Fallen { rain, snow }, out),
-            (None, false) => store::<false, false>(state, lanes, from, factor, Fallen { rain, snow }, out),
+            (None, true) => store::<true, false>(state, lanes, from, factor, &fallen, out),
+            (None, false) => store::<false, false>(state, lanes, from, factor, &fallen, out),
         }
         lanes.mix_row(swe, with_snow, mean_swe);
         lanes.mix_row(net_melt, from, mean_net_melt);
@@ -273,10 +273,10 @@ fn split(
     lanes: &Lanes,
     precipitation_mm: f64,
     factor: &[f64],
-    Fallen { rain, snow }: Fallen<'_>,
+    fallen: &mut Fallen<'_>,
     snow_fraction: impl Fn(f64, f64, f64) -> f64,
 ) {
-    let State { input, mean, .. } = state;
+    let (State { input, mean, .. }, Fallen { rain, snow }) = (state, fallen);
     let (warm, per_c) = (&lanes.phase_warm_c, &lanes.phase_per_c);
     split_row(snow, rain, input, mean, warm, per_c, factor, precipitation_mm, snow_fraction);
 }
@@ -297,7 +297,7 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool>(
     lanes: &Lanes,
     from: usize,
     degree_day_factor: &[f64],
-    fallen: Fallen<'_>,
+    fallen: &Fallen<'_>,
     out: Out<'_>,
 ) {
     let Out { swe, net_melt, outflow, bare_ground_rain } = out;
