@@ -139,3 +139,74 @@ pub fn centroid(swe_mm: &[f64], outflow_mm: &[f64]) -> Option<f64> {
     }
     if sum == 0.0 { None } else { Some(moment / sum) }
 }
+
+/// The sum of S over the year's days.
+pub fn swe_area(swe_mm: &[f64]) -> f64 {
+    let mut sum = 0.0;
+    for swe in swe_mm {
+        sum += swe;
+    }
+    sum
+}
+
+/// S on a day over the peak.
+pub fn over_peak(swe_mm: &[f64], survey: usize) -> Option<f64> {
+    let largest = peak(swe_mm).0;
+    if largest < LEAST_PEAK_MM { None } else { Some(swe_mm[survey - 1] / largest) }
+}
+
+/// Net melt of the days before a day over the year's.
+pub fn melt_share_before(swe_mm: &[f64], net_melt_mm: &[f64], day: usize) -> Option<f64> {
+    let total = in_window(net_melt_mm, 1, net_melt_mm.len());
+    if total < 1.0 || peak(swe_mm).0 < LEAST_PEAK_MM {
+        return None;
+    }
+    Some(in_window(net_melt_mm, 1, day - 1) / total)
+}
+
+/// The largest sum of a flux over so many days in succession.
+pub fn largest(flux_mm: &[f64], days: usize) -> f64 {
+    let mut largest = 0.0;
+    for last in days..=flux_mm.len() {
+        let sum = in_window(flux_mm, last + 1 - days, last);
+        if sum > largest {
+            largest = sum;
+        }
+    }
+    largest
+}
+
+/// First day by which a flux has brought an amount since the year began.
+pub fn arrival(flux_mm: &[f64], amount_mm: f64) -> Option<usize> {
+    let mut sum = 0.0;
+    for d in 1..=flux_mm.len() {
+        sum += flux_mm[d - 1];
+        if sum >= amount_mm {
+            return Some(d);
+        }
+    }
+    None
+}
+
+/// Snowfall over all that fell.
+pub fn snowfall_fraction(rain_mm: &[f64], snow_mm: &[f64]) -> Option<f64> {
+    let (rain, snow) = (in_window(rain_mm, 1, rain_mm.len()), in_window(snow_mm, 1, snow_mm.len()));
+    if rain + snow == 0.0 { None } else { Some(snow / (rain + snow)) }
+}
+
+/// S on a day over all that fell on the days before it.
+pub fn over_precipitation(swe_mm: &[f64], rain_mm: &[f64], snow_mm: &[f64], survey: usize) -> Option<f64> {
+    let fallen = in_window(rain_mm, 1, survey - 1) + in_window(snow_mm, 1, survey - 1);
+    if fallen == 0.0 { None } else { Some(swe_mm[survey - 1] / fallen) }
+}
+
+/// Days with at least 10 mm of rain on at least 10 mm of SWE.
+pub fn rain_on_snow_days(swe_mm: &[f64], rain_mm: &[f64]) -> usize {
+    let mut count = 0;
+    for d in 1..=rain_mm.len() {
+        if rain_mm[d - 1] >= 10.0 && swe_mm[d - 1] >= 10.0 {
+            count += 1;
+        }
+    }
+    count
+}

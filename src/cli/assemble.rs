@@ -12,6 +12,7 @@ use crate::perturb::MonthlyChange;
 use crate::report::{Input, Origin, Reader};
 use crate::scenario::{DefaultInForce, Document, Draft, ObservedTyped, Scenario};
 use crate::snow::{LaneSpec, Lanes, OpenLedger, correct_catch};
+use crate::units::cubic_hectometres;
 use crate::weather::{Record, Series};
 use std::path::Path;
 
@@ -89,6 +90,8 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             unlikely.extend(basin.unlikely(station_m));
             unlikely
                 .extend(baseline.iter().flat_map(|baseline| baseline.unlikely(scenario.weather.detrend_to)));
+            let yearly_mm = basin.precipitation_ratio(station_m) * mean_yearly_mm(&weather);
+            unlikely.extend(scenario.season.unlikely(cubic_hectometres(yearly_mm, basin.area_km2())));
             let mut observations = Vec::with_capacity(observed.len());
             for (site, (observed, file)) in scenario.observed.iter().zip(observed) {
                 unlikely.extend(observed.unlikely(&site.key, site.elevation_m, &basin, station_m));
@@ -180,6 +183,11 @@ fn take<T>(result: Result<T, Vec<Fault>>, faults: &mut Vec<Fault>) -> Option<T> 
     result.map_err(|more| faults.extend(more)).ok()
 }
 
+/// Mean precipitation of a year of the station's series, mm.
+fn mean_yearly_mm(weather: &Series) -> f64 {
+    weather.precipitation_mm.iter().sum::<f64>() / weather.years.len() as f64
+}
+
 impl Ready {
     /// What was read and the command that repeats it, without the flags that change no result.
     pub fn origin(&self, command: &str, path: &Path, shared: &Shared) -> Origin {
@@ -227,7 +235,7 @@ impl Ready {
 
     /// Mean yearly precipitation at the station, corrected for catch, mm.
     pub fn mean_precipitation_mm(&self) -> f64 {
-        self.weather.precipitation_mm.iter().sum::<f64>() / self.weather.years.len() as f64
+        mean_yearly_mm(&self.weather)
     }
 
     /// Share of the station's precipitation, corrected for catch, that falls as snow at its own temperature.

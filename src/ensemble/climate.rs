@@ -64,12 +64,15 @@ pub fn band_climates(
             let is_winter = winter.0.contains(month);
             winter_days += usize::from(is_winter);
             for (band, climate) in climates.iter_mut().enumerate() {
-                let at = day * detail.width + lanes.column(0, band);
-                climate.precipitation_mm += detail.rain_mm[at] + detail.snow_mm[at];
-                climate.snowfall_mm += detail.snow_mm[at];
+                let column = lanes.column(0, band);
+                let (rain_mm, snow_mm) =
+                    (block.row(&block.rain_mm, day)[column], block.row(&block.snow_mm, day)[column]);
+                climate.precipitation_mm += rain_mm + snow_mm;
+                climate.snowfall_mm += snow_mm;
                 if is_winter {
-                    climate.winter_mean_c += detail.mean_c[at];
-                    climate.winter_freezing_share += f64::from(u8::from(detail.mean_c[at] < 0.0));
+                    let mean_c = detail.mean_c[day * detail.width + column];
+                    climate.winter_mean_c += mean_c;
+                    climate.winter_freezing_share += f64::from(u8::from(mean_c < 0.0));
                 }
             }
         }

@@ -1,7 +1,7 @@
 //! How a measure is distributed over realizations, or over single years.
 
 use super::quantile::{quantile, sorted};
-use crate::season::{Kind, NONE, NOT_GONE, Outcome};
+use crate::season::{Kind, Outcome};
 use serde::Serialize;
 
 /// Dots that stand for a distribution in a figure, each for an equal share of it.
@@ -16,6 +16,8 @@ pub struct Distribution {
     pub none: usize,
     /// Of these, snow that never went.
     pub not_gone: usize,
+    /// Of these, what was waited for and had not come by the year's end.
+    pub not_reached: usize,
     /// 5 % quantile.
     pub q05: Outcome,
     /// 25 % quantile.
@@ -32,25 +34,26 @@ pub struct Distribution {
 }
 
 impl Distribution {
-    /// The distribution of the values.
-    pub fn of(_: Kind, values: impl IntoIterator<Item = f64>) -> Self {
-        Self::of_sorted(&sorted(values))
+    /// The distribution of a measure's values.
+    pub fn of(kind: Kind, values: impl IntoIterator<Item = f64>) -> Self {
+        Self::of_sorted(kind, &sorted(values))
     }
 
     /// The same with its dots.
-    pub fn with_dots(_: Kind, values: impl IntoIterator<Item = f64>) -> Self {
+    pub fn with_dots(kind: Kind, values: impl IntoIterator<Item = f64>) -> Self {
         let values = sorted(values);
-        let dot = |dot: usize| Outcome::from(quantile(&values, (dot as f64 + 0.5) / DOTS as f64));
-        Self { dots: (0..DOTS).map(dot).collect(), ..Self::of_sorted(&values) }
+        let dot = |dot: usize| kind.outcome(quantile(&values, (dot as f64 + 0.5) / DOTS as f64));
+        Self { dots: (0..DOTS).map(dot).collect(), ..Self::of_sorted(kind, &values) }
     }
 
-    fn of_sorted(values: &[f64]) -> Self {
-        let q = |p| Outcome::from(quantile(values, p));
-        let count = |what: f64| values.iter().filter(|value| **value == what).count();
+    fn of_sorted(kind: Kind, values: &[f64]) -> Self {
+        let q = |p| kind.outcome(quantile(values, p));
+        let count = |what: Outcome| values.iter().filter(|value| kind.outcome(**value) == what).count();
         Self {
             count: values.len(),
-            none: count(NONE),
-            not_gone: count(NOT_GONE),
+            none: count(Outcome::None),
+            not_gone: count(Outcome::NotGone),
+            not_reached: count(Outcome::NotReached),
             q05: q(0.05),
             q25: q(0.25),
             q50: q(0.50),

@@ -55,7 +55,7 @@ pub struct LevelFindings {
     /// What 90, 70, 50, 30 and 10 % of single years bring at least; of the basin's volumes.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub exceeded: Vec<Exceeded>,
-    /// Years with none and years whose snow never went, over all realizations.
+    /// Years with none, and years whose snow never went or whose volume never came, over all realizations.
     pub years_undefined: [usize; 2],
     /// Paired change from the reference.
     pub shift: Option<Shift>,

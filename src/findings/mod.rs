@@ -32,7 +32,7 @@ pub use record_range::{
     REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Range, RecordRange, RecordRangeLevel, Refit,
 };
 pub use resample::{Estimate, Resamples};
-pub use shift::{LEAST_REFERENCE_MM, Shift, percent_change};
+pub use shift::{Shift, percent_change};
 pub use spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
 pub use temperature_held::{HeldLevel, TemperatureHeldSpread};
 pub use through_year::{LevelThroughYear, SweThroughYear};

@@ -5,13 +5,10 @@ use super::resample::{Estimate, Ranked, Resamples};
 use crate::season::Kind;
 use serde::Serialize;
 
-/// No percentage is given of a reference median below this, mm.
-pub const LEAST_REFERENCE_MM: f64 = 10.0;
-
 /// The paired change from the reference to a level over realizations.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct Shift {
-    /// Median of the paired changes, mm or days, with its Monte Carlo error.
+    /// Median of the paired changes, in the unit of the measure, with its Monte Carlo error.
     pub median: Estimate,
     /// Mean of the paired changes.
     pub mean: f64,
@@ -55,9 +52,9 @@ impl Shift {
     }
 }
 
-/// `100 * median change / median reference`; nothing where the reference is too small for a percentage of its kind, or
-/// the kind has none.
+/// `100 * median change / median reference`; nothing where the reference is below the least of its kind, or where no
+/// percentage is taken of the kind.
 pub fn percent_change(kind: Kind, median_change: f64, median_reference: f64) -> Option<f64> {
-    let is_enough = kind.least_reference().is_some_and(|least| median_reference >= least);
-    is_enough.then(|| 100.0 * median_change / median_reference)
+    let least = kind.least_reference()?;
+    (median_reference >= least).then(|| 100.0 * median_change / median_reference)
 }

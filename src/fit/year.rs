@@ -151,7 +151,7 @@ impl Season {
     fn sharp_melt_out(&self, days: &[Option<f64>]) -> Outcome {
         let day_before = match self.melt_out {
             Outcome::Value(day) => Some(day as usize - 1),
-            Outcome::None => None,
+            Outcome::None | Outcome::NotReached => None,
             Outcome::NotGone => Some(days.len()),
         };
         let is_sharp = day_before.is_some_and(|day| days[day - 1].is_some());

@@ -37,12 +37,13 @@ pub fn daily_csv(lanes: &Lanes, weather: &Series, into: &mut impl Write) -> Resu
             let date = date_of(block.first, day + 1);
             let lane_row =
                 |table: &[f64]| day * detail.width..day * detail.width + table.len().min(detail.width);
+            let (rain, snow) = (block.row(&block.rain_mm, day), block.row(&block.snow_mm, day));
             let outflow = block.row(&block.outflow_mm, day);
             let bare_ground_rain = block.row(&block.bare_ground_rain_mm, day);
             let rows: [&[f64]; 9] = [
                 &detail.mean_c[lane_row(&detail.mean_c)],
-                &detail.rain_mm[lane_row(&detail.rain_mm)],
-                &detail.snow_mm[lane_row(&detail.snow_mm)],
+                rain,
+                snow,
                 &detail.melt_mm[lane_row(&detail.melt_mm)],
                 &detail.refreeze_mm[lane_row(&detail.refreeze_mm)],
                 outflow,

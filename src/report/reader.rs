@@ -115,11 +115,39 @@ impl Reader {
     pub fn outcome(self, outcome: Outcome, kind: Kind) -> String {
         match (outcome, kind) {
             (Outcome::Value(value), Kind::AmountMm) => self.amount(value),
-            (Outcome::Value(value), Kind::DayOfWaterYear) => date(value, self.starts),
+            (Outcome::Value(value), Kind::AmountMmDays) => {
+                let unit = self.units.depth_days();
+                format!("{} {}", fixed(unit.of(value), 0), unit.word)
+            }
+            (Outcome::Value(value), Kind::Share) => {
+                format!("{} %", fixed(100.0 * value, share_decimals(value)))
+            }
+            (Outcome::Value(value), Kind::DayCount) => format!("{} days", fixed(value, 1)),
+            (Outcome::Value(value), Kind::DayOfWaterYear | Kind::ArrivalDay) => date(value, self.starts),
             (Outcome::None, _) => "none".to_owned(),
             (Outcome::NotGone, _) => "not gone".to_owned(),
+            (Outcome::NotReached, _) => "not reached".to_owned(),
         }
     }
+
+    /// A change of a measure of that kind: `−112 mm`, `−6.5 percentage points`, `+1.2 days`, `−12 d`.
+    pub fn change_of(self, kind: Kind, change: f64) -> String {
+        match kind {
+            Kind::AmountMm => self.change(change),
+            Kind::AmountMmDays => {
+                let unit = self.units.depth_days();
+                format!("{} {}", signed(unit.of(change), 0), unit.word)
+            }
+            Kind::Share => format!("{} percentage points", signed(100.0 * change, share_decimals(change))),
+            Kind::DayCount => format!("{} days", signed(change, 1)),
+            Kind::DayOfWaterYear | Kind::ArrivalDay => format!("{} d", signed(change, 0)),
+        }
+    }
+}
+
+/// Whole percent, and tenths below 10 %.
+fn share_decimals(share: f64) -> usize {
+    usize::from(100.0 * share.abs() < 9.95)
 }
 
 #[cfg(test)]
@@ -164,6 +192,27 @@ mod tests {
             ["+0.6 °C", "+3.6 °C", "+1.25 °C"]
         );
         assert_eq!(reader(UnitSystem::Us).level(0.59819), "+1.08 °F");
+    }
+
+    /// By hand: 60 000 mm days / 25.4 are 2362.2 in days.
+    #[test]
+    fn every_kind_of_measure_has_its_words() {
+        let [metric, us] = [UnitSystem::Metric, UnitSystem::Us].map(reader);
+        let said = |kind, value| metric.outcome(Outcome::Value(value), kind);
+        assert_eq!(
+            [0.724, 0.0996, 0.0994, 1.2].map(|v| said(Kind::Share, v)),
+            ["72 %", "10 %", "9.9 %", "120 %"]
+        );
+        assert_eq!(said(Kind::AmountMmDays, 60_000.0), "60\u{2009}000 mm days");
+        assert_eq!(us.outcome(Outcome::Value(60_000.0), Kind::AmountMmDays), "2362 in days");
+        assert_eq!(said(Kind::DayCount, 1.25), "1.3 days");
+        assert_eq!([Kind::DayOfWaterYear, Kind::ArrivalDay].map(|kind| said(kind, 183.0)), ["1 April"; 2]);
+        assert_eq!(metric.outcome(Outcome::NotReached, Kind::ArrivalDay), "not reached");
+        assert_eq!(metric.change_of(Kind::Share, -0.12), "−12 percentage points");
+        assert_eq!(us.change_of(Kind::AmountMmDays, -254.0), "−10 in days");
+        assert_eq!(metric.change_of(Kind::DayCount, 0.5), "+0.5 days");
+        assert_eq!([-112.0, 12.0].map(|mm| metric.change_of(Kind::AmountMm, mm)), ["−112 mm", "+12 mm"]);
+        assert_eq!(metric.change_of(Kind::ArrivalDay, -11.6), "−12 d");
     }
 
     /// By hand: 1830 m / 0.3048; 0.5 and 3.5 mm per degC are 0.5 / 25.4 / 1.8 and 3.5 / 25.4 / 1.8 in per degF; 7 %

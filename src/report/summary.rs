@@ -75,7 +75,12 @@ pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Ve
     let ratio = basin.precipitation_ratio(study.station_elevation_m);
     let headline = |year: &crate::ensemble::RecordYear| HeadlineYear {
         water_year: year.water_year,
-        value: year.values.first().copied().map_or(Outcome::None, Outcome::from),
+        value: study
+            .record
+            .measures
+            .first()
+            .zip(year.values.first())
+            .map_or(Outcome::None, |(measure, value)| measure.kind.outcome(*value)),
     };
     let mean_and_variation = study.record.headline_mean_and_variation();
     lines(&Summary {
@@ -84,7 +89,8 @@ pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Ve
         title: study.title,
         units: UnitsSaid { numbers: UnitSystem::Metric, words_figures_and_tables: study.reader.units },
         answer,
-        quantiles: "Hyndman & Fan (1996) type 8; amounts in mm, dates as day of the water year counted from 1",
+        quantiles: "Hyndman & Fan (1996) type 8; amounts in mm, SWE area in mm days, shares from 0 to 1, counts of \
+                    days, dates as day of the water year counted from 1",
         season: study.season,
         basin: BasinSummary {
             area_km2: basin.area_km2(),

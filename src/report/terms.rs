@@ -1,10 +1,10 @@
 //! The words of the briefing, explained.
 
 use super::reader::Reader;
-use crate::season::BARE_MM;
+use crate::season::{BARE_MM, LEAST_PEAK_MM, RAIN_ON_SNOW_MM};
 
 /// Terms and their meanings, in a reader's units.
-pub(super) fn terms(reader: Reader) -> [(&'static str, String); 15] {
+pub(super) fn terms(reader: Reader) -> [(&'static str, String); 22] {
     let water_equivalent = format!("depth of water if the snow were melted, {}", reader.units.depth().word);
     let warming_level = format!(
         "degrees added to the record's temperatures, whose own climate is {}; all levels are compared with the reference",
@@ -15,7 +15,17 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 15] {
         format!("basin: first day after the peak with at most 5 % of it left; band: first day below {bare}");
     let departure =
         format!("first day after the peak with at most half of it left; last day with {bare} or more");
-    let terms: [(&'static str, &str); 15] = [
+    let area = format!(
+        "SWE summed over the year's days, {}: more of it is more snow, or snow that lies longer (the storage-time integral)",
+        reader.units.depth_days().word
+    );
+    let over_peak = format!("none where the peak stays below {}", reader.limit(LEAST_PEAK_MM));
+    let rain_on_snow = format!(
+        "a day with {0} of rain or more on {0} of SWE or more; the bands tell more than the basin mean, which mixes bare \
+         and snowy ground",
+        reader.limit(RAIN_ON_SNOW_MM)
+    );
+    let terms: [(&'static str, &str); 22] = [
         ("Snow water equivalent (SWE)", &water_equivalent),
         ("Water year", "starts on the stated day and is named for the calendar year in which it ends"),
         ("Warming level", &warming_level),
@@ -25,7 +35,7 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 15] {
         ),
         (
             "Period value",
-            "one realization as one number: the mean over its years of an amount, the median of a date",
+            "one realization as one number: the median over its years of a date, the mean of all else",
         ),
         (
             "Precipitation spread",
@@ -48,6 +58,23 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 15] {
             "the day on which the year's outflow balances: sum of day times outflow over outflow",
         ),
         ("Snowpack outflow, water input", "water leaving the pack; the same with rain on bare ground"),
+        (
+            "Largest of a day, of 3 days in succession",
+            "within one water year, without routing through channels or lakes: not a flood peak",
+        ),
+        (
+            "Day by which the stated volume has come",
+            "first day of the water year by which so much has come since its first; not reached in a year that brings less",
+        ),
+        ("Net melt done before a day", "net melt of the days before it over the year's"),
+        ("SWE area", &area),
+        ("Survey-date SWE over the peak", &over_peak),
+        (
+            "Snowfall fraction, SWE over precipitation",
+            "the year's snowfall over its rain and snow; SWE as the day begins over the rain and snow of the water year's \
+             days before it; none where nothing fell",
+        ),
+        ("Day of rain on snow", &rain_on_snow),
         (
             "± behind a chance or ratio",
             "Monte Carlo error: one standard deviation over resampled realizations",

@@ -2,10 +2,8 @@
 
 use super::numbers::{days_moved, fixed, signed};
 use super::reader::Reader;
-use crate::findings::{
-    Chance, Crossing, CrossingRange, Findings, LEAST_REFERENCE_MM, LevelFindings, MeasureFindings,
-};
-use crate::season::Kind;
+use crate::findings::{Chance, Crossing, CrossingRange, Findings, LevelFindings, MeasureFindings};
+use crate::season::{Kind, LEAST_REFERENCE_MM};
 
 /// A 5-95 % range of fewer pairs is their extremes.
 const LEAST_PAIRS_FOR_A_RANGE: usize = 20;
@@ -66,10 +64,7 @@ pub fn answer_in_words(findings: &Findings, mean_change_sd_pct: Option<f64>, rea
 
 /// `30-year mean 1 April SWE` or, of a date, `30-year median melt-out`.
 pub fn period_name(findings: &Findings, measure: &MeasureFindings) -> String {
-    let statistic = match measure.measure.kind {
-        Kind::AmountMm => "mean",
-        Kind::DayOfWaterYear => "median",
-    };
+    let statistic = if measure.measure.kind.is_date() { "median" } else { "mean" };
     format!("{}-year {statistic} {}", findings.years, measure.measure.title)
 }
 

@@ -1,31 +1,14 @@
 //! What a measure is, and what it comes to where there is nothing to measure.
 
+use super::Kind;
 use serde::{Serialize, Serializer};
 
 /// No value: there was nothing to measure. Ranked before every date.
 pub const NONE: f64 = f64::NEG_INFINITY;
 /// Snow that never went. Ranked after every date.
 pub const NOT_GONE: f64 = f64::INFINITY;
-
-/// Amount or date.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
-#[serde(rename_all = "snake_case")]
-pub enum Kind {
-    /// An amount of water, mm.
-    AmountMm,
-    /// A day of the water year, counted from 1.
-    DayOfWaterYear,
-}
-
-impl Kind {
-    /// The reference median from which on a change is told as a percentage too; nothing where it never is.
-    pub fn least_reference(self) -> Option<f64> {
-        match self {
-            Self::AmountMm => Some(10.0),
-            Self::DayOfWaterYear => None,
-        }
-    }
-}
+/// Something that had not come by the year's end. Ranked after every date.
+pub const NOT_REACHED: f64 = f64::INFINITY;
 
 /// Of what a measure is taken.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
@@ -44,27 +27,27 @@ pub struct Measure {
     pub name: String,
     /// Its name in a sentence: `1 April SWE`.
     pub title: String,
-    /// Amount or date.
+    /// What its numbers count.
     pub kind: Kind,
     /// Of what it is taken.
     pub place: Place,
-    /// Whether it is water that is told as a volume, too.
+    /// Whether it is water that leaves the pack or reaches the ground over a part of the year: told as a volume, too.
     pub is_volume: bool,
 }
 
 impl Measure {
-    pub(super) fn amount(name: String, title: String) -> Self {
-        Self { name, title, kind: Kind::AmountMm, place: Place::BandsAndBasin, is_volume: false }
+    pub(super) fn new(kind: Kind, name: impl Into<String>, title: impl Into<String>) -> Self {
+        Self { name: name.into(), title: title.into(), kind, place: Place::BandsAndBasin, is_volume: false }
     }
 
-    pub(super) fn date(name: &str, title: &str) -> Self {
-        Self {
-            name: name.to_owned(),
-            title: title.to_owned(),
-            kind: Kind::DayOfWaterYear,
-            place: Place::BandsAndBasin,
-            is_volume: false,
-        }
+    /// The same of the basin mean alone.
+    pub(super) fn of_basin(self) -> Self {
+        Self { place: Place::Basin, ..self }
+    }
+
+    /// The same, told as a volume, too.
+    pub(super) fn told_as_volume(self) -> Self {
+        Self { is_volume: true, ..self }
     }
 }
 
@@ -77,18 +60,8 @@ pub enum Outcome {
     None,
     /// Snow never went.
     NotGone,
-}
-
-impl From<f64> for Outcome {
-    fn from(number: f64) -> Self {
-        if number == NOT_GONE {
-            Self::NotGone
-        } else if number.is_finite() {
-            Self::Value(number)
-        } else {
-            Self::None
-        }
-    }
+    /// What was waited for had not come by the year's end.
+    NotReached,
 }
 
 impl Outcome {
@@ -96,18 +69,19 @@ impl Outcome {
     pub fn value(self) -> Option<f64> {
         match self {
             Self::Value(value) => Some(value),
-            Self::None | Self::NotGone => None,
+            Self::None | Self::NotGone | Self::NotReached => None,
         }
     }
 }
 
 impl Serialize for Outcome {
-    /// A number, or the words `none` and `not gone`.
+    /// A number, or the words `none`, `not gone` and `not reached`.
     fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
         match self {
             Self::Value(value) => serializer.serialize_f64(*value),
             Self::None => serializer.serialize_str("none"),
             Self::NotGone => serializer.serialize_str("not gone"),
+            Self::NotReached => serializer.serialize_str("not reached"),
         }
     }
 }

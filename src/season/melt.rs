@@ -1,39 +1,69 @@
-//! When the snow melts: dates of net melt, half-gone day, melt-out.
+//! When the snow melts: dates and shares of net melt, half-gone day, melt-out.
 
-use super::rows;
+use super::{Asked, Kind, Measure, NONE, NOT_GONE, Peaks, SeasonSettings, name_of, rows};
 use super::{BARE_MM, BASIN_MELT_OUT_SHARE, LEAST_MELT_MM, LEAST_PEAK_MM, SAME_SWE_MM};
-use super::{Measure, NONE, NOT_GONE, Peaks, Place, SeasonSettings};
+use crate::calendar::day_of_water_year;
 use crate::snow::YearBlock;
 
 const MELT_SHARES: [f64; 3] = [0.1, 0.5, 0.9];
+/// Dates of the family, which stand before its shares.
+const DATES: usize = MELT_SHARES.len() + 3;
 
-pub(super) fn list(_: &SeasonSettings) -> Vec<Measure> {
-    vec![
-        Measure::date("melt_d10_day", "day with 10 % of the net melt done"),
-        Measure::date("melt_d50_day", "day with half of the net melt done"),
-        Measure::date("melt_d90_day", "day with 90 % of the net melt done"),
-        Measure::date("half_gone_day", "half-gone day"),
-        Measure::date("melt_out_day", "melt-out"),
-        Measure { place: Place::Basin, ..Measure::date("last_snow_day", "last day with snow") },
-    ]
+pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
+    let date = |name: &str, title: &str| Measure::new(Kind::DayOfWaterYear, name, title);
+    let dates: [Measure; DATES] = [
+        date("melt_d10_day", "day with 10 % of the net melt done"),
+        date("melt_d50_day", "day with half of the net melt done"),
+        date("melt_d90_day", "day with 90 % of the net melt done"),
+        date("half_gone_day", "half-gone day"),
+        date("melt_out_day", "melt-out"),
+        date("last_snow_day", "last day with snow").of_basin(),
+    ];
+    let shares = settings.melt_shares_before.iter().map(|day| {
+        let title = format!("net melt done before {}", day.words());
+        Measure::new(Kind::Share, format!("melt_share_before_{}", name_of(*day)), title)
+    });
+    dates.into_iter().chain(shares).collect()
 }
 
-/// Takes the family's measures; accumulates the block's net melt in place.
-pub(super) fn take(block: &mut YearBlock, peaks: &Peaks, _: &SeasonSettings, into: &mut [f64]) {
+/// Takes the family's measures; accumulates the block's net melt in place, which gives the sums before stated days in
+/// passing.
+///
+/// A share is the plain sum of net melt before its day over the year's: where rain freezes into the pack before anything
+/// melts it can lie a little below 0, and where snow of the next winter takes up rain, a little above 1.
+pub(super) fn take(block: &mut YearBlock, peaks: &Peaks, asked: &Asked, into: &mut [f64]) {
     let (width, days) = (block.width, block.days);
+    let (dates, shares) = into.split_at_mut(DATES * width);
+    let day_of = |(at, day): (usize, &_)| (day_of_water_year(block.first, *day) - 1, at);
+    let mut befores: Vec<(usize, usize)> =
+        asked.settings.melt_shares_before.iter().enumerate().map(day_of).collect();
+    befores.sort_unstable();
     let mut total = vec![0.0; width];
     let mut reached = vec![0.0; width];
-    rows::accumulate(&mut block.net_melt_mm[..days * width], &mut total, &mut reached);
+    let mut done = 0;
+    for (day, at) in befores {
+        rows::accumulate(&mut block.net_melt_mm[done * width..day * width], &mut total, &mut reached);
+        shares[at * width..(at + 1) * width].copy_from_slice(&total);
+        done = day;
+    }
+    rows::accumulate(&mut block.net_melt_mm[done * width..days * width], &mut total, &mut reached);
+
+    let has_timing = |column: usize| peaks.swe_mm[column] >= LEAST_PEAK_MM;
+    let has_melt = |column: usize| has_timing(column) && total[column] >= LEAST_MELT_MM;
+    for row in shares.chunks_exact_mut(width) {
+        for (column, share) in row.iter_mut().enumerate() {
+            *share = if has_melt(column) { *share / total[column] } else { NONE };
+        }
+    }
     for column in 0..width {
-        let mut set = |measure: usize, value: f64| into[measure * width + column] = value;
-        let has_timing = peaks.swe_mm[column] >= LEAST_PEAK_MM;
-        let has_melt = has_timing && total[column] >= LEAST_MELT_MM;
+        let mut set = |measure: usize, value: f64| dates[measure * width + column] = value;
         for (measure, share) in MELT_SHARES.into_iter().enumerate() {
-            let day = if has_melt { first_day_with(block, column, share * total[column]) } else { NONE };
+            let day =
+                if has_melt(column) { first_day_with(block, column, share * total[column]) } else { NONE };
             set(measure, day);
         }
         let [half_gone, melt_out, last_snow] =
-            if has_timing { departure(block, peaks, column) } else { [NONE; 3] };
+            if has_timing(column) { departure(block, peaks, column) } else { [NONE; 3] };
         set(3, half_gone);
         set(4, melt_out);
         set(5, last_snow);

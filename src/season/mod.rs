@@ -3,23 +3,30 @@
 //! One list of families, one file a family. A family names its measures and takes them from a year block; a new one is
 //! its own file and one line of `FAMILIES`.
 //!
-//! In rows of numbers a measure that has no value is [`NONE`], and snow that never went is [`NOT_GONE`]: ordered as the
-//! statistics want them, before and after every date. [`Outcome`] is the same, said in words.
+//! In rows of numbers a measure that has no value is [`NONE`], snow that never went is [`NOT_GONE`], and what has not come
+//! [`NOT_REACHED`]: ordered as the statistics want them, before and after every date. [`Outcome`] is the same, said in
+//! words; [`Kind::outcome`] makes it of a number.
 
+mod arrival;
 mod cover;
+mod kind;
 mod measure;
 mod melt;
 mod outflow;
 mod period;
+mod precipitation;
 mod rows;
 mod state;
+mod sums;
 
 pub use cover::{SEASONAL_COVER_DAYS, is_seasonal, longest_cover_days};
-pub use measure::{Kind, Measure, NONE, NOT_GONE, Outcome, Place};
+pub use kind::{Kind, LEAST_REFERENCE_MM};
+pub use measure::{Measure, NONE, NOT_GONE, NOT_REACHED, Outcome, Place};
 pub use melt::keeps_snow;
 pub use period::period_value;
 
 use crate::calendar::{MonthDay, WaterYearStart};
+use crate::fault::Unlikely;
 use crate::snow::YearBlock;
 use serde::Serialize;
 
@@ -31,6 +38,8 @@ const LEAST_MELT_MM: f64 = 1.0;
 pub const BARE_MM: f64 = 1.0;
 /// A basin with this share of its peak left has melted out.
 const BASIN_MELT_OUT_SHARE: f64 = 0.05;
+/// A day of rain on snow has as much of both, mm: common practice.
+pub const RAIN_ON_SNOW_MM: f64 = 10.0;
 
 /// SWE that differs by less is the same but for rounding, mm.
 pub const SAME_SWE_MM: f64 = 1e-9;
@@ -44,20 +53,50 @@ pub struct SeasonSettings {
     pub survey_dates: Vec<MonthDay>,
     /// Windows of outflow and water input, first and last day.
     pub volume_windows: Vec<[MonthDay; 2]>,
+    /// Days before and from which outflow and water input are summed.
+    pub outflow_before: Vec<MonthDay>,
+    /// Days before which the share of the year's net melt is taken.
+    pub melt_shares_before: Vec<MonthDay>,
+    /// A volume whose arrival is dated, hm3.
+    pub arrival_volume_hm3: Option<f64>,
+}
+
+impl SeasonSettings {
+    /// Whether the volume to wait for is more than a whole year's mean precipitation over the basin.
+    pub fn unlikely(&self, yearly_precipitation_hm3: f64) -> Option<Unlikely> {
+        let volume_hm3 =
+            self.arrival_volume_hm3.filter(|volume_hm3| *volume_hm3 > yearly_precipitation_hm3)?;
+        Some(Unlikely::new(
+            "season.arrival_volume_hm3",
+            format!(
+                "{volume_hm3} hm3 are more than the rain and snow of a whole mean year over the basin, \
+                 {yearly_precipitation_hm3:.0} hm3; a thousand acre-feet are 1.23348 hm3"
+            ),
+        ))
+    }
 }
 
 /// A family of measures: what it has, and how it takes them.
 struct Family {
     list: fn(&SeasonSettings) -> Vec<Measure>,
-    take: fn(&mut YearBlock, &Peaks, &SeasonSettings, &mut [f64]),
+    take: fn(&mut YearBlock, &Peaks, &Asked, &mut [f64]),
 }
 
 /// Every family. Those that only read come before `melt`, which accumulates the block's net melt in place.
-const FAMILIES: [Family; 3] = [
+const FAMILIES: &[Family] = &[
     Family { list: state::list, take: state::take },
     Family { list: outflow::list, take: outflow::take },
+    Family { list: arrival::list, take: arrival::take },
+    Family { list: precipitation::list, take: precipitation::take },
     Family { list: melt::list, take: melt::take },
 ];
+
+/// What is asked of every year.
+struct Asked {
+    settings: SeasonSettings,
+    /// The volume whose arrival is dated, as water over the whole basin, mm.
+    arrival_mm: Option<f64>,
+}
 
 /// Each column's highest SWE and its day, which most families need.
 struct Peaks {
@@ -67,17 +106,20 @@ struct Peaks {
 
 /// The measures of a study.
 pub struct Measures {
-    settings: SeasonSettings,
+    asked: Asked,
     list: Vec<Measure>,
-    counts: [usize; FAMILIES.len()],
+    /// How many measures each family has.
+    counts: Vec<usize>,
 }
 
 impl Measures {
-    /// Every measure that the settings ask for.
-    pub fn new(settings: SeasonSettings) -> Self {
-        let lists = FAMILIES.map(|family| (family.list)(&settings));
-        let counts = [0, 1, 2].map(|family: usize| lists[family].len());
-        Self { settings, list: lists.into_iter().flatten().collect(), counts }
+    /// Every measure that the settings ask for, of a basin of so many km2.
+    pub fn new(settings: SeasonSettings, basin_area_km2: f64) -> Self {
+        let lists: Vec<Vec<Measure>> = FAMILIES.iter().map(|family| (family.list)(&settings)).collect();
+        let counts = lists.iter().map(Vec::len).collect();
+        // 1 hm3 over 1 km2 is 1 m of water.
+        let arrival_mm = settings.arrival_volume_hm3.map(|volume_hm3| 1000.0 * volume_hm3 / basin_area_km2);
+        Self { asked: Asked { settings, arrival_mm }, list: lists.into_iter().flatten().collect(), counts }
     }
 
     /// The measures, in the order in which they are taken.
@@ -87,7 +129,7 @@ impl Measures {
 
     /// Dates and windows.
     pub fn settings(&self) -> &SeasonSettings {
-        &self.settings
+        &self.asked.settings
     }
 
     /// Takes every measure of every column of a year into `[measure][column]`.
@@ -98,10 +140,15 @@ impl Measures {
         let mut peaks = Peaks { swe_mm: vec![0.0; width], day: vec![1.0; width] };
         rows::highest(&block.swe_mm[..block.days * width], &mut peaks.swe_mm, &mut peaks.day);
         let mut rest = into;
-        for (family, count) in FAMILIES.iter().zip(self.counts) {
+        for (family, count) in FAMILIES.iter().zip(&self.counts) {
             let (part, after) = rest.split_at_mut(count * width);
-            (family.take)(block, &peaks, &self.settings, part);
+            (family.take)(block, &peaks, &self.asked, part);
             rest = after;
         }
     }
+}
+
+/// A day of the year within a measure's name: `04_01`.
+fn name_of(day: MonthDay) -> String {
+    day.to_string().replace('-', "_")
 }

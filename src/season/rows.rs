@@ -51,15 +51,70 @@ pub(super) fn add_with_moment(table: &[f64], sum: &mut [f64], moment: &mut [f64]
     }
 }
 
-/// Turns a table into the highest of its running sums so far, in place, and leaves the last running sum in `total`.
+/// Largest value of `outflow` and of `outflow + rain`, of a day and of three days in succession. The results come in as 0.
+///
+/// The three days are added anew on each day, so that no rounding of days long past stays in the sum.
+#[multiversion(targets("x86_64+avx512f+avx512vl+avx512dq+avx2+avx", "x86_64+avx2+avx"))]
+pub(super) fn largest(
+    outflow: &[f64],
+    rain: &[f64],
+    one_day: &mut [f64],
+    one_day_with_rain: &mut [f64],
+    three_days: &mut [f64],
+    three_days_with_rain: &mut [f64],
+) {
+    let width = one_day.len();
+    let larger = |a: f64, b: f64| if b > a { b } else { a };
+    for day in 0..outflow.len() / width {
+        let (q, r) = (row(outflow, day, width), row(rain, day, width));
+        let (one_day, one_day_with_rain) = (&mut one_day[..width], &mut one_day_with_rain[..width]);
+        for column in 0..width {
+            one_day[column] = larger(one_day[column], q[column]);
+            one_day_with_rain[column] = larger(one_day_with_rain[column], q[column] + r[column]);
+        }
+        if day < 2 {
+            continue;
+        }
+        let [q_1, q_2] = [day - 1, day - 2].map(|day| row(outflow, day, width));
+        let [r_1, r_2] = [day - 1, day - 2].map(|day| row(rain, day, width));
+        let (three_days, three_days_with_rain) =
+            (&mut three_days[..width], &mut three_days_with_rain[..width]);
+        for column in 0..width {
+            let of_outflow = q_2[column] + q_1[column] + q[column];
+            let of_rain = r_2[column] + r_1[column] + r[column];
+            three_days[column] = larger(three_days[column], of_outflow);
+            three_days_with_rain[column] = larger(three_days_with_rain[column], of_outflow + of_rain);
+        }
+    }
+}
+
+/// A day's row of a table, days counted from 0.
+#[inline(always)]
+fn row(table: &[f64], day: usize, width: usize) -> &[f64] {
+    &table[day * width..(day + 1) * width]
+}
+
+/// Counts the days on which both tables of a column hold at least `least`; `count` comes in as 0.
+#[multiversion(targets("x86_64+avx512f+avx512vl+avx512dq+avx2+avx", "x86_64+avx2+avx"))]
+pub(super) fn count_both(one: &[f64], other: &[f64], least: f64, count: &mut [f64]) {
+    let width = count.len();
+    for (one, other) in one.chunks_exact(width).zip(other.chunks_exact(width)) {
+        let count = &mut count[..width];
+        for column in 0..width {
+            let is_both = one[column] >= least && other[column] >= least;
+            count[column] += if is_both { 1.0 } else { 0.0 };
+        }
+    }
+}
+
+/// Turns a table into the highest of its running sums so far, in place: `total` is the running sum and `reached` its
+/// highest, from the days before the table's to its last.
 ///
 /// Net melt falls on a day that freezes more than it melts; its running maximum reaches a share on the same day as the
 /// running sum first does, and can be searched.
 #[multiversion(targets("x86_64+avx512f+avx512vl+avx512dq+avx2+avx", "x86_64+avx2+avx"))]
 pub(super) fn accumulate(table: &mut [f64], total: &mut [f64], reached: &mut [f64]) {
     let width = total.len();
-    total.fill(0.0);
-    reached.fill(0.0);
     for row in table.chunks_exact_mut(width) {
         let (total, reached) = (&mut total[..width], &mut reached[..width]);
         for column in 0..width {

@@ -25,6 +25,10 @@ pub struct YearBlock {
     pub outflow_mm: Vec<f64>,
     /// Rain on bare ground, mm.
     pub bare_ground_rain_mm: Vec<f64>,
+    /// Rain, mm.
+    pub rain_mm: Vec<f64>,
+    /// Snowfall, mm.
+    pub snow_mm: Vec<f64>,
     /// Everything else a day has, where it was asked for.
     pub detail: Option<Detail>,
 }
@@ -36,10 +40,6 @@ pub struct Detail {
     pub width: usize,
     /// Daily mean temperature, degC.
     pub mean_c: Vec<f64>,
-    /// Rain, mm.
-    pub rain_mm: Vec<f64>,
-    /// Snowfall, mm.
-    pub snow_mm: Vec<f64>,
     /// Melt, mm.
     pub melt_mm: Vec<f64>,
     /// Refreezing, mm.
@@ -67,11 +67,11 @@ impl YearBlock {
             net_melt_mm: rows(LONGEST_YEAR, width),
             outflow_mm: rows(LONGEST_YEAR, width),
             bare_ground_rain_mm: rows(LONGEST_YEAR, width),
+            rain_mm: rows(LONGEST_YEAR, width),
+            snow_mm: rows(LONGEST_YEAR, width),
             detail: with_detail.then(|| Detail {
                 width: lane_width,
                 mean_c: lane_rows(),
-                rain_mm: lane_rows(),
-                snow_mm: lane_rows(),
                 melt_mm: lane_rows(),
                 refreeze_mm: lane_rows(),
                 ice_mm: lane_rows(),
@@ -88,16 +88,20 @@ impl YearBlock {
     /// Copies the basin means into a narrow block, whose columns they are.
     pub fn copy_means(&self, into: &mut Self) {
         (into.first, into.days) = (self.first, self.days);
-        let copy = |from: &[f64], into: &mut [f64], narrow: usize| {
-            for (row, means) in from.chunks_exact(self.width).zip(into.chunks_exact_mut(narrow)) {
+        let tables = [
+            (&self.rain_mm, &mut into.rain_mm),
+            (&self.snow_mm, &mut into.snow_mm),
+            (&self.swe_mm, &mut into.swe_mm),
+            (&self.net_melt_mm, &mut into.net_melt_mm),
+            (&self.outflow_mm, &mut into.outflow_mm),
+            (&self.bare_ground_rain_mm, &mut into.bare_ground_rain_mm),
+        ];
+        for (from, narrow) in tables {
+            let rows = from.chunks_exact(self.width).zip(narrow.chunks_exact_mut(into.width));
+            for (row, means) in rows.take(self.days + 1) {
                 means.copy_from_slice(&row[self.mixes_at..]);
             }
-        };
-        let narrow = into.width;
-        copy(&self.swe_mm[..(self.days + 1) * self.width], &mut into.swe_mm, narrow);
-        copy(&self.net_melt_mm[..self.days * self.width], &mut into.net_melt_mm, narrow);
-        copy(&self.outflow_mm[..self.days * self.width], &mut into.outflow_mm, narrow);
-        copy(&self.bare_ground_rain_mm[..self.days * self.width], &mut into.bare_ground_rain_mm, narrow);
+        }
     }
 
     /// One day's row of a table of this block, days counted from 0.

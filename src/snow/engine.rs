@@ -48,8 +48,6 @@ struct State {
     mean: Vec<f64>,
     melt_degrees: Vec<f64>,
     freeze_degrees: Vec<f64>,
-    snow: Vec<f64>,
-    rain: Vec<f64>,
     melt: Vec<f64>,
     refreeze: Vec<f64>,
     input: Vec<f64>,
@@ -72,8 +70,6 @@ impl<'l> Engine<'l> {
             mean: row(),
             melt_degrees: row(),
             freeze_degrees: row(),
-            snow: row(),
-            rain: row(),
             melt: row(),
             refreeze: row(),
             input: row(),
@@ -178,7 +174,11 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
         let (swe, mean_swe) = before[row.start..].split_at_mut(width);
         let (net_melt, mean_net_melt) = block.net_melt_mm[row.clone()].split_at_mut(width);
         let (outflow, mean_outflow) = block.outflow_mm[row.clone()].split_at_mut(width);
-        let (bare_ground_rain, mean_bare_ground_rain) = block.bare_ground_rain_mm[row].split_at_mut(width);
+        let (bare_ground_rain, mean_bare_ground_rain) =
+            block.bare_ground_rain_mm[row.clone()].split_at_mut(width);
+        let (rain, mean_rain) = block.rain_mm[row.clone()].split_at_mut(width);
+        let (snow, mean_snow) = block.snow_mm[row].split_at_mut(width);
+        let mut fallen = Fallen { rain, snow };
         let with_snow = first_with_any(swe);
         let month = usize::from(weather.month[day]) * width;
         let month = month..month + width;
@@ -192,17 +192,25 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
             let share = &lanes.precipitation_factor[month.clone()];
             match lanes.phase {
                 PhaseRule::Linear { .. } => {
-                    split(state, lanes, precipitation_mm, share, linear_snow_fraction);
+                    split(state, lanes, precipitation_mm, share, &mut fallen, linear_snow_fraction);
                 }
-                PhaseRule::Step { .. } => split(state, lanes, precipitation_mm, share, |mean, warm, _| {
-                    step_snow_fraction(mean, warm)
-                }),
-                PhaseRule::Tanh => split(state, lanes, precipitation_mm, share, tanh_snow_fraction),
+                PhaseRule::Step { .. } => {
+                    split(state, lanes, precipitation_mm, share, &mut fallen, |mean, warm, _| {
+                        step_snow_fraction(mean, warm)
+                    });
+                }
+                PhaseRule::Tanh => {
+                    split(state, lanes, precipitation_mm, share, &mut fallen, tanh_snow_fraction);
+                }
             }
-            from = first_with_any(&state.snow[..with_snow]);
-            bare_rain_row(state, from, bare_ground_rain);
+            from = first_with_any(&fallen.snow[..with_snow]);
+            bare_rain_row(&mut state.bare_ground_rain, &fallen.rain[..from], bare_ground_rain);
+            lanes.mix_row(fallen.rain, 0, mean_rain);
+            lanes.mix_row(fallen.snow, from, mean_snow);
         } else {
-            bare_ground_rain.fill(0.0);
+            for row in [&mut *bare_ground_rain, &mut *fallen.rain, mean_rain, &mut *fallen.snow, mean_snow] {
+                row.fill(0.0);
+            }
         }
         let half_range_offset = &lanes.half_range_offset_c[month];
         degrees_row(state, lanes, from, weather.half_range_c[day], half_range_offset);
@@ -218,14 +226,14 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
                 state.melt[..from].fill(0.0);
                 state.refreeze[..from].fill(0.0);
                 if is_wet {
-                    store::<true, true>(state, lanes, from, factor, out);
+                    store::<true, true>(state, lanes, from, factor, &fallen, out);
                 } else {
-                    store::<false, true>(state, lanes, from, factor, out);
+                    store::<false, true>(state, lanes, from, factor, &fallen, out);
                 }
-                detail.keep(day, state, is_wet);
+                detail.keep(day, state);
             }
-            (None, true) => store::<true, false>(state, lanes, from, factor, out),
-            (None, false) => store::<false, false>(state, lanes, from, factor, out),
+            (None, true) => store::<true, false>(state, lanes, from, factor, &fallen, out),
+            (None, false) => store::<false, false>(state, lanes, from, factor, &fallen, out),
         }
         lanes.mix_row(swe, with_snow, mean_swe);
         lanes.mix_row(net_melt, from, mean_net_melt);
@@ -235,6 +243,12 @@ fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut Yea
     let end = weather.mean_c.len() * row_width;
     let (swe, mean_swe) = block.swe_mm[end..end + row_width].split_at_mut(width);
     lanes.mix_row(swe, 0, mean_swe);
+}
+
+/// What falls on a day.
+struct Fallen<'b> {
+    rain: &'b mut [f64],
+    snow: &'b mut [f64],
 }
 
 /// Where the store puts a day: SWE as the next day begins, and the day's fluxes.
@@ -260,12 +274,11 @@ fn first_with_any(row: &[f64]) -> usize {
     vectors.take_while(|lanes| !is_any(lanes)).count() * ROW_MULTIPLE
 }
 
-/// Rain of the lanes before `from`, which have no snow and get none, falls on bare ground.
+/// Rain of the lanes at the front, which have no snow and get none, falls on bare ground.
 #[inline(always)]
-fn bare_rain_row(state: &mut State, from: usize, bare_ground_rain: &mut [f64]) {
-    let rain = &state.rain[..from];
-    bare_ground_rain[..from].copy_from_slice(rain);
-    for (year_bare, rain) in state.bare_ground_rain.iter_mut().zip(rain) {
+fn bare_rain_row(year_bare: &mut [f64], rain: &[f64], bare_ground_rain: &mut [f64]) {
+    bare_ground_rain[..rain.len()].copy_from_slice(rain);
+    for (year_bare, rain) in year_bare.iter_mut().zip(rain) {
         *year_bare += rain;
     }
 }
@@ -276,9 +289,10 @@ fn split(
     lanes: &Lanes,
     precipitation_mm: f64,
     factor: &[f64],
+    fallen: &mut Fallen<'_>,
     snow_fraction: impl Fn(f64, f64, f64) -> f64,
 ) {
-    let State { snow, rain, input, mean, .. } = state;
+    let (State { input, mean, .. }, Fallen { rain, snow }) = (state, fallen);
     let (warm, per_c) = (&lanes.phase_warm_c, &lanes.phase_per_c);
     split_row(snow, rain, input, mean, warm, per_c, factor, precipitation_mm, snow_fraction);
 }
@@ -299,6 +313,7 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool>(
     lanes: &Lanes,
     from: usize,
     degree_day_factor: &[f64],
+    fallen: &Fallen<'_>,
     out: Out<'_>,
 ) {
     let Out { swe, net_melt, outflow, bare_ground_rain } = out;
@@ -313,8 +328,8 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool>(
         &mut net_melt[from..],
         &mut outflow[from..],
         &mut bare_ground_rain[from..],
-        &state.snow[from..],
-        &state.rain[from..],
+        &fallen.snow[from..],
+        &fallen.rain[from..],
         &state.mean[from..],
         &state.melt_degrees[from..],
         &state.freeze_degrees[from..],
@@ -325,22 +340,17 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool>(
 }
 
 impl Detail {
-    /// Copies the day's rows; a dry day has no rain and snow.
-    fn keep(&mut self, day: usize, state: &State, is_wet: bool) {
+    /// Copies the day's rows.
+    fn keep(&mut self, day: usize, state: &State) {
         let row = day * self.width..(day + 1) * self.width;
-        let keep = |into: &mut Vec<f64>, from: &[f64], is_valid: bool| {
-            if is_valid {
-                into[row.clone()].copy_from_slice(from);
-            } else {
-                into[row.clone()].fill(0.0);
-            }
-        };
-        keep(&mut self.mean_c, &state.mean, true);
-        keep(&mut self.rain_mm, &state.rain, is_wet);
-        keep(&mut self.snow_mm, &state.snow, is_wet);
-        keep(&mut self.melt_mm, &state.melt, true);
-        keep(&mut self.refreeze_mm, &state.refreeze, true);
-        keep(&mut self.ice_mm, &state.ice, true);
-        keep(&mut self.liquid_mm, &state.liquid, true);
+        for (table, day) in [
+            (&mut self.mean_c, &state.mean),
+            (&mut self.melt_mm, &state.melt),
+            (&mut self.refreeze_mm, &state.refreeze),
+            (&mut self.ice_mm, &state.ice),
+            (&mut self.liquid_mm, &state.liquid),
+        ] {
+            table[row.clone()].copy_from_slice(day);
+        }
     }
 }

@@ -45,6 +45,12 @@ impl UnitSystem {
         self.either(("mm", "mm"), ("in", "in"), |mm| mm / DepthUnit::Inch.to_millimetres(1.0))
     }
 
+    /// Of a depth of water times the days it lay, in mm days.
+    pub fn depth_days(self) -> Unit {
+        let us = ("in days", "in_days");
+        self.either(("mm days", "mm_days"), us, |mm_days| mm_days / DepthUnit::Inch.to_millimetres(1.0))
+    }
+
     /// Of a temperature in degC.
     pub fn temperature(self) -> Unit {
         self.either(("°C", "degC"), ("°F", "degF"), |c| fahrenheit_degrees(c) + 32.0)
@@ -135,6 +141,7 @@ mod tests {
             assert!((found - expected).abs() <= 1e-12 * expected.abs(), "{found} for {expected}");
         };
         near(us(UnitSystem::depth, 254.0), 10.0);
+        near(us(UnitSystem::depth_days, 60_960.0), 2400.0);
         near(us(UnitSystem::elevation, 3048.0), 10_000.0);
         near(us(UnitSystem::temperature, -40.0), -40.0);
         near(us(UnitSystem::temperature, 100.0), 212.0);
@@ -167,6 +174,7 @@ mod tests {
     fn metric_numbers_stay_as_they_are() {
         let all = [
             UnitSystem::depth,
+            UnitSystem::depth_days,
             UnitSystem::temperature,
             UnitSystem::warming,
             UnitSystem::elevation,

@@ -1,8 +1,8 @@
 //! The engine's rows against the naive loop: 60 and 64 lanes, 30 years, diurnal degrees, linear phase, the weather of a
 //! mountain station whose low bands are bare for half the year.
 //!
-//! Both sides fill the same four tables of a year (SWE, net melt, outflow, bare-ground rain); the engine also makes the
-//! basin means and closes its ledgers. `cargo bench` prints lane-days per second and, at the end, their ratio.
+//! Both sides fill the same six tables of a year (SWE, net melt, outflow, bare-ground rain, rain, snowfall); the engine
+//! also makes the basin means and closes its ledgers. `cargo bench` prints lane-days per second and, at the end, their ratio.
 
 #[path = "../naive.rs"]
 #[allow(dead_code, reason = "the tests use the rest of it")]
@@ -202,7 +202,7 @@ impl Bench {
 /// worked out once, so that the loop is not slowed by a cosine that nobody would leave in it.
 fn run_naive(bands: &[naive::Band], days: &[naive::Day]) -> f64 {
     const DAYS: usize = 366;
-    let (mut swe, mut net_melt, mut outflow, mut bare) = ([0.0; DAYS], [0.0; DAYS], [0.0; DAYS], [0.0; DAYS]);
+    let [mut swe, mut net_melt, mut outflow, mut bare, mut rain, mut snow] = [[0.0; DAYS]; 6];
     let mut seen = 0.0;
     for band in bands {
         let (mut ice_mm, mut liquid_mm) = (0.0, 0.0);
@@ -217,8 +217,10 @@ fn run_naive(bands: &[naive::Band], days: &[naive::Day]) -> f64 {
             net_melt[at] = result.melt_mm - result.refreeze_mm;
             outflow[at] = result.outflow_mm;
             bare[at] = result.bare_ground_rain_mm;
+            rain[at] = result.rain_mm;
+            snow[at] = result.snow_mm;
         }
-        let tables = black_box([&swe, &net_melt, &outflow, &bare]);
+        let tables = black_box([&swe, &net_melt, &outflow, &bare, &rain, &snow]);
         seen += tables[0][0] + ice_mm + liquid_mm;
     }
     seen

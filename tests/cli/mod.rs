@@ -8,6 +8,7 @@ mod keys;
 mod observed;
 mod results;
 mod scenario_faults;
+mod season_keys;
 mod streams;
 mod units;
 mod verdict;

@@ -56,8 +56,8 @@ fn check_lane(
             let net_melt = expected.melt_mm - expected.refreeze_mm;
             for (what, engine, naive) in [
                 ("mean temperature", detail.mean_c[at_detail], expected.mean_c),
-                ("rain", detail.rain_mm[at_detail], expected.rain_mm),
-                ("snow", detail.snow_mm[at_detail], expected.snow_mm),
+                ("rain", block.rain_mm[at], expected.rain_mm),
+                ("snow", block.snow_mm[at], expected.snow_mm),
                 ("melt", detail.melt_mm[at_detail], expected.melt_mm),
                 ("refreezing", detail.refreeze_mm[at_detail], expected.refreeze_mm),
                 ("ice", detail.ice_mm[at_detail], expected.ice_mm),
@@ -96,6 +96,8 @@ fn check_basin(
                 ("basin net melt", block.net_melt_mm[at], mean(|r| r.melt_mm - r.refreeze_mm)),
                 ("basin outflow", block.outflow_mm[at], mean(|r| r.outflow_mm)),
                 ("basin bare-ground rain", block.bare_ground_rain_mm[at], mean(|r| r.bare_ground_rain_mm)),
+                ("basin rain", block.rain_mm[at], mean(|r| r.rain_mm)),
+                ("basin snow", block.snow_mm[at], mean(|r| r.snow_mm)),
             ] {
                 assert_same(engine, naive, what, day + 1)?;
             }

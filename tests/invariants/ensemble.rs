@@ -28,11 +28,17 @@ impl Study {
         Self {
             record: scenario.climate.series(),
             lanes: scenario.lanes(changes),
-            measures: Measures::new(SeasonSettings {
-                water_year_starts: start,
-                survey_dates: vec![start.0, survey],
-                volume_windows: Vec::new(),
-            }),
+            measures: Measures::new(
+                SeasonSettings {
+                    water_year_starts: start,
+                    survey_dates: vec![start.0, survey],
+                    volume_windows: Vec::new(),
+                    outflow_before: vec![survey],
+                    melt_shares_before: vec![survey],
+                    arrival_volume_hm3: Some(0.3),
+                },
+                1.0,
+            ),
             levels: changes.len(),
             bands: scenario.basin.bands.len(),
         }

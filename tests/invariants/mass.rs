@@ -16,7 +16,7 @@ proptest! {
         let lanes = scenario.lanes(&scenario.changes());
         for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
             for lane in 0..lanes.count() {
-                let input_mm = detail_sum(&block, lane);
+                let input_mm = column_sum(&block, &block.rain_mm, lane) + column_sum(&block, &block.snow_mm, lane);
                 let end = block.swe_mm[block.days * block.width + lane];
                 let change_mm = end - block.swe_mm[lane];
                 let outflow_mm = column_sum(&block, &block.outflow_mm, lane);
@@ -38,8 +38,8 @@ proptest! {
                 ("SWE", &block.swe_mm[..(block.days + 1) * block.width]),
                 ("outflow", &block.outflow_mm[..block.days * block.width]),
                 ("bare-ground rain", &block.bare_ground_rain_mm[..block.days * block.width]),
-                ("rain", &detail.rain_mm[..block.days * detail.width]),
-                ("snow", &detail.snow_mm[..block.days * detail.width]),
+                ("rain", &block.rain_mm[..block.days * block.width]),
+                ("snow", &block.snow_mm[..block.days * block.width]),
                 ("melt", &detail.melt_mm[..block.days * detail.width]),
                 ("refreezing", &detail.refreeze_mm[..block.days * detail.width]),
                 ("ice", &detail.ice_mm[..block.days * detail.width]),
@@ -62,12 +62,11 @@ proptest! {
         let lanes = scenario.lanes(&changes);
         let bands = scenario.basin.bands.len();
         for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
-            let detail = block.detail.as_ref().expect("detail was asked for");
             for (day, band) in (0..block.days).flat_map(|day| (0..bands).map(move |band| (day, band))) {
-                let [at_cool, at_warm] = [0, 1].map(|group| day * detail.width + lanes.column(group, band));
-                let (cool, warm) = (detail.snow_mm[at_cool], detail.snow_mm[at_warm]);
+                let [at_cool, at_warm] = [0, 1].map(|group| day * block.width + lanes.column(group, band));
+                let (cool, warm) = (block.snow_mm[at_cool], block.snow_mm[at_warm]);
                 prop_assert!(warm <= cool, "warming by {more_c} degC turned {cool} mm of snow into {warm} mm");
-                let (cool_all, warm_all) = (cool + detail.rain_mm[at_cool], warm + detail.rain_mm[at_warm]);
+                let (cool_all, warm_all) = (cool + block.rain_mm[at_cool], warm + block.rain_mm[at_warm]);
                 prop_assert!((cool_all - warm_all).abs() <= 1e-12 * cool_all.max(1.0));
             }
         }
@@ -76,12 +75,4 @@ proptest! {
 
 fn column_sum(block: &YearBlock, table: &[f64], lane: usize) -> f64 {
     (0..block.days).map(|day| table[day * block.width + lane]).sum()
-}
-
-fn detail_sum(block: &YearBlock, lane: usize) -> f64 {
-    let detail = block.detail.as_ref().expect("detail was asked for");
-    (0..block.days)
-        .map(|day| day * detail.width + lane)
-        .map(|at| detail.rain_mm[at] + detail.snow_mm[at])
-        .sum()
 }

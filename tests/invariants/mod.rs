@@ -7,6 +7,7 @@ mod mass;
 mod realizations;
 mod same_bits;
 mod scenario;
+mod season_sums;
 mod seasons;
 
 use proptest::test_runner::Config;

@@ -14,17 +14,12 @@ fn bits(block: &YearBlock) -> Vec<u64> {
     values.extend_from_slice(&block.net_melt_mm[..end]);
     values.extend_from_slice(&block.outflow_mm[..end]);
     values.extend_from_slice(&block.bare_ground_rain_mm[..end]);
+    values.extend_from_slice(&block.rain_mm[..end]);
+    values.extend_from_slice(&block.snow_mm[..end]);
     if let Some(detail) = &block.detail {
         let end = block.days * detail.width;
-        for table in [
-            &detail.mean_c,
-            &detail.rain_mm,
-            &detail.snow_mm,
-            &detail.melt_mm,
-            &detail.refreeze_mm,
-            &detail.ice_mm,
-            &detail.liquid_mm,
-        ] {
+        for table in [&detail.mean_c, &detail.melt_mm, &detail.refreeze_mm, &detail.ice_mm, &detail.liquid_mm]
+        {
             values.extend_from_slice(&table[..end]);
         }
     }

@@ -5,7 +5,7 @@ use super::scenario::{Scenario, scenarios};
 use crate::naive_season::{self as naive, Place, When};
 use proptest::prelude::*;
 use thawline::calendar::{MonthDay, day_of_water_year};
-use thawline::season::{Kind, Measures, NONE, NOT_GONE, SeasonSettings};
+use thawline::season::{Measures, NONE, NOT_GONE, NOT_REACHED, SeasonSettings};
 use thawline::snow::{Path, YearBlock};
 
 fn month_day(month: u32, day: u32) -> MonthDay {
@@ -25,28 +25,62 @@ fn column_of(block: &YearBlock, table: &[f64], column: usize) -> Vec<f64> {
     (0..block.days).map(|day| table[day * block.width + column]).collect()
 }
 
-/// Every measure of a column by its name, from the definitions.
+/// Every measure of a column by its name, from the definitions; the basin has 1 km2.
 fn expected(block: &YearBlock, column: usize, settings: &SeasonSettings) -> Vec<(String, f64)> {
-    let swe = column_of(block, &block.swe_mm, column);
-    let net_melt = column_of(block, &block.net_melt_mm, column);
-    let outflow = column_of(block, &block.outflow_mm, column);
-    let bare = column_of(block, &block.bare_ground_rain_mm, column);
+    let [swe, net_melt, outflow, bare, rain, snow] = [
+        &block.swe_mm,
+        &block.net_melt_mm,
+        &block.outflow_mm,
+        &block.bare_ground_rain_mm,
+        &block.rain_mm,
+        &block.snow_mm,
+    ]
+    .map(|table| column_of(block, table, column));
+    let water_input: Vec<f64> = outflow.iter().zip(&bare).map(|(outflow, bare)| outflow + bare).collect();
+    let waters = [("outflow", &outflow), ("water_input", &water_input)];
     let place = if column >= block.mixes_at { Place::Basin } else { Place::Band };
     let name = |day: &MonthDay| day.to_string().replace('-', "_");
+    let day_of = |day: &MonthDay| day_of_water_year(block.first, *day);
+    let or_none = |value: Option<f64>| value.unwrap_or(NONE);
     let mut all = Vec::new();
     for survey in &settings.survey_dates {
-        let day = day_of_water_year(block.first, *survey);
-        all.push((format!("swe_{}_mm", name(survey)), swe[day - 1]));
+        let (survey, day) = (name(survey), day_of(survey));
+        all.push((format!("swe_{survey}_mm"), swe[day - 1]));
+        all.push((format!("swe_{survey}_over_peak"), or_none(naive::over_peak(&swe, day))));
+        let over_precipitation = naive::over_precipitation(&swe, &rain, &snow, day);
+        all.push((format!("swe_{survey}_over_precipitation"), or_none(over_precipitation)));
     }
-    for [from, to] in &settings.volume_windows {
-        let days = [from, to].map(|day| day_of_water_year(block.first, *day));
-        let (outflow, bare) =
-            (naive::in_window(&outflow, days[0], days[1]), naive::in_window(&bare, days[0], days[1]));
-        let window = format!("{}_to_{}", name(from), name(to));
-        all.push((format!("outflow_{window}_mm"), outflow));
-        all.push((format!("water_input_{window}_mm"), outflow + bare));
+    for day in &settings.melt_shares_before {
+        let share = naive::melt_share_before(&swe, &net_melt, day_of(day));
+        all.push((format!("melt_share_before_{}", name(day)), or_none(share)));
+    }
+    for (water, flux) in waters {
+        for [from, to] in &settings.volume_windows {
+            let sum = naive::in_window(flux, day_of(from), day_of(to));
+            all.push((format!("{water}_{}_to_{}_mm", name(from), name(to)), sum));
+        }
+        for day in &settings.outflow_before {
+            let [before, from] =
+                [naive::in_window(flux, 1, day_of(day) - 1), naive::in_window(flux, day_of(day), block.days)];
+            all.push((format!("{water}_before_{}_mm", name(day)), before));
+            all.push((format!("{water}_from_{}_mm", name(day)), from));
+        }
+        all.push((format!("{water}_year_mm"), naive::in_window(flux, 1, block.days)));
+        all.push((format!("{water}_largest_1_day_mm"), naive::largest(flux, 1)));
+        all.push((format!("{water}_largest_3_days_mm"), naive::largest(flux, 3)));
+        if let Some(volume_hm3) = settings.arrival_volume_hm3 {
+            let arrival = match (place, naive::arrival(flux, 1000.0 * volume_hm3)) {
+                (Place::Band, _) => NONE,
+                (Place::Basin, None) => NOT_REACHED,
+                (Place::Basin, Some(day)) => day as f64,
+            };
+            all.push((format!("{water}_arrival_day"), arrival));
+        }
     }
     all.push(("peak_swe_mm".to_owned(), naive::peak(&swe).0));
+    all.push(("swe_area_mm_days".to_owned(), naive::swe_area(&swe)));
+    all.push(("snowfall_fraction".to_owned(), or_none(naive::snowfall_fraction(&rain, &snow))));
+    all.push(("rain_on_snow_days".to_owned(), naive::rain_on_snow_days(&swe, &rain) as f64));
     for (measure, when) in [
         ("peak_day", naive::peak_day(&swe)),
         ("melt_d10_day", naive::melt_share_day(&swe, &net_melt, 0.1)),
@@ -58,26 +92,44 @@ fn expected(block: &YearBlock, column: usize, settings: &SeasonSettings) -> Vec<
     ] {
         all.push((measure.to_owned(), number(when)));
     }
-    let centroid = naive::centroid(&swe, &outflow).unwrap_or(NONE);
-    all.push(("outflow_centroid_day".to_owned(), centroid));
+    all.push(("outflow_centroid_day".to_owned(), or_none(naive::centroid(&swe, &outflow))));
     all
+}
+
+/// Settings with random days beside the usual ones, and a volume to wait for.
+fn settings(scenario: &Scenario, [survey, before]: [u32; 2], arrival_mm: f64) -> SeasonSettings {
+    let is_southern = scenario.climate.is_southern;
+    let usual = month_day(if is_southern { 10 } else { 4 }, 1);
+    let window = if is_southern { [usual, month_day(1, 31)] } else { [usual, month_day(7, 31)] };
+    SeasonSettings {
+        water_year_starts: scenario.climate.start(),
+        survey_dates: vec![usual, month_day(survey, 15)],
+        volume_windows: vec![window, [scenario.climate.start().0; 2]],
+        outflow_before: vec![usual, month_day(before, 16)],
+        melt_shares_before: vec![month_day(before, 16), usual],
+        arrival_volume_hm3: Some(arrival_mm / 1000.0),
+    }
+}
+
+/// Whole numbers, which must be the same to the last bit.
+fn is_whole(name: &str) -> bool {
+    name.ends_with("_days") && name != "swe_area_mm_days"
+        || name.ends_with("_day") && name != "outflow_centroid_day"
 }
 
 proptest! {
     #![proptest_config(cases(48))]
 
     /// Every measure of every band and basin mean in every year is what its definition gives: whole days to the day,
-    /// amounts and centroids to 1e-9.
+    /// shares and centroids to 1e-9, amounts to 1e-9 mm, the SWE area, a sum of hundreds of depths, to 1e-9 of itself.
     #[test]
-    fn measures_are_their_definitions(scenario in scenarios(), survey_month in 1..=12_u32) {
-        let is_southern = scenario.climate.is_southern;
-        let window = if is_southern { [month_day(10, 1), month_day(1, 31)] } else { [month_day(4, 1), month_day(7, 31)] };
-        let settings = SeasonSettings {
-            water_year_starts: scenario.climate.start(),
-            survey_dates: vec![month_day(if is_southern { 10 } else { 4 }, 1), month_day(survey_month, 15)],
-            volume_windows: vec![window, [scenario.climate.start().0; 2]],
-        };
-        let measures = Measures::new(settings.clone());
+    fn measures_are_their_definitions(
+        scenario in scenarios(),
+        months in [1..=12_u32, 1..=12_u32],
+        arrival_mm in 1.0..1500.0,
+    ) {
+        let settings = settings(&scenario, months, arrival_mm);
+        let measures = Measures::new(settings.clone(), 1.0);
         let lanes = scenario.lanes(&scenario.changes());
         for mut block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
             let untouched = block.clone();
@@ -90,8 +142,11 @@ proptest! {
                     let at = measures.list().iter().position(|measure| measure.name == name);
                     let at = at.unwrap_or_else(|| panic!("no measure '{name}'"));
                     let found = values[at * block.width + column];
-                    let is_whole_day = measures.list()[at].kind == Kind::DayOfWaterYear && name != "outflow_centroid_day";
-                    let allowed = if is_whole_day { 0.0 } else { 1e-9 };
+                    let allowed = match name.as_str() {
+                        name if is_whole(name) => 0.0,
+                        "swe_area_mm_days" => 1e-9 * expected.max(1.0),
+                        _ => 1e-9,
+                    };
                     prop_assert!(
                         found == expected || (found - expected).abs() <= allowed,
                         "{name} of column {column}: {found} for {expected}"

@@ -62,10 +62,11 @@ pub fn weather_over_bands(case: &Case) {
     let mut engine = Engine::new(&lanes, true);
     let block = engine.year(series.view(&series.years[0])).expect("a closed ledger");
     let detail = block.detail.as_ref().expect("detail was asked for");
-    let at = |band: usize| detail.width + lanes.column(0, band);
     let bands = 0..elevations_m.len();
-    case.check("mean_c", &bands.clone().map(|band| detail.mean_c[at(band)]).collect::<Vec<_>>());
-    let fallen = bands.map(|band| detail.rain_mm[at(band)] + detail.snow_mm[at(band)]);
+    let means = bands.clone().map(|band| detail.mean_c[detail.width + lanes.column(0, band)]);
+    case.check("mean_c", &means.collect::<Vec<_>>());
+    let [rain, snow] = [block.row(&block.rain_mm, 1), block.row(&block.snow_mm, 1)];
+    let fallen = bands.map(|band| rain[lanes.column(0, band)] + snow[lanes.column(0, band)]);
     case.check("precipitation_mm", &fallen.collect::<Vec<_>>());
 }
 

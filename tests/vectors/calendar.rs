@@ -1,10 +1,10 @@
-//! Days of the water year, and a year's outflow and melt as dates.
+//! Days of the water year, and how long snow lies in it.
 
 use super::case::Case;
+use super::still_year::still_year;
 use chrono::{Datelike, NaiveDate};
 use thawline::calendar::{MonthDay, WaterYearStart, date_of, day_of_water_year};
-use thawline::season::{Measures, SeasonSettings, is_seasonal, longest_cover_days};
-use thawline::snow::YearBlock;
+use thawline::season::{is_seasonal, longest_cover_days};
 
 fn start() -> WaterYearStart {
     WaterYearStart(MonthDay::new(10, 1).expect("a day"))
@@ -50,44 +50,6 @@ pub fn water_years(case: &Case) {
     case.check("last_day", &parts(date_of(first, start.days_in(water_year))));
 }
 
-/// A year in which the stated amounts melt and leave the pack on the first days, and nothing on the others.
-pub fn melt_dates(case: &Case) {
-    const DAYS: usize = 365;
-    let amounts: Vec<f64> = case.input("amounts_mm");
-    let mut flux_mm = amounts.clone();
-    flux_mm.resize(DAYS, 0.0);
-    let mut left_mm: f64 = amounts.iter().sum();
-    let mut swe_mm = vec![left_mm];
-    for flux in &flux_mm {
-        left_mm -= flux;
-        swe_mm.push(left_mm);
-    }
-    let block = YearBlock { net_melt_mm: flux_mm.clone(), outflow_mm: flux_mm, ..still_year(swe_mm) };
-    let names = ["outflow_centroid_day", "melt_d10_day", "melt_d50_day", "melt_d90_day"];
-    for (name, value) in names.into_iter().zip(measured(block, Vec::new(), names)) {
-        case.check(name, &[value]);
-    }
-}
-
-/// A year whose SWE runs straight between stated days, and is 0 after the last: 1 April, the peak, and how far apart.
-pub fn survey_and_peak(case: &Case) {
-    let days: Vec<usize> = case.input("days");
-    let stated_mm: Vec<f64> = case.input("swe_mm");
-    let mut swe_mm = vec![stated_mm[0]];
-    for (days, swe) in days.windows(2).zip(stated_mm.windows(2)) {
-        let count = days[1] - days[0];
-        swe_mm.extend((1..=count).map(|day| swe[0] + (swe[1] - swe[0]) * day as f64 / count as f64));
-    }
-    swe_mm.resize(366, 0.0);
-    let april = MonthDay::new(4, 1).expect("a day");
-    let names = ["swe_04_01_mm", "peak_swe_mm", "peak_day"];
-    let values = measured(still_year(swe_mm), vec![april], names);
-    for (name, value) in names.into_iter().zip(values) {
-        case.check(name, &[value]);
-    }
-    case.check("short_of_peak_pct", &[100.0 * (1.0 - values[0] / values[1])]);
-}
-
 /// A year made of runs of days, each with its SWE: its longest cover, and whether that is seasonal snow.
 pub fn cover(case: &Case) {
     let runs: Vec<(usize, f64)> = case.input("days_and_swe_mm");
@@ -96,32 +58,4 @@ pub fn cover(case: &Case) {
     let days = longest_cover_days(&still_year(swe_mm), 0);
     case.check("longest_cover_days", &[days as f64]);
     case.check("is_seasonal", &[f64::from(u8::from(is_seasonal(days)))]);
-}
-
-/// A common year of one column with the stated SWE as each day begins and as the year ends, and no fluxes.
-fn still_year(swe_mm: Vec<f64>) -> YearBlock {
-    let days = swe_mm.len() - 1;
-    YearBlock {
-        first: NaiveDate::from_ymd_opt(2006, 10, 1).expect("a date"),
-        days,
-        width: 1,
-        mixes_at: 1,
-        swe_mm,
-        net_melt_mm: vec![0.0; days],
-        outflow_mm: vec![0.0; days],
-        bare_ground_rain_mm: vec![0.0; days],
-        detail: None,
-    }
-}
-
-/// Measures of a year of one column, by their names.
-fn measured<const N: usize>(mut block: YearBlock, survey_dates: Vec<MonthDay>, names: [&str; N]) -> [f64; N] {
-    let settings = SeasonSettings { water_year_starts: start(), survey_dates, volume_windows: Vec::new() };
-    let measures = Measures::new(settings);
-    let mut values = vec![0.0; measures.list().len()];
-    measures.take(&mut block, &mut values);
-    names.map(|name| {
-        let at = measures.list().iter().position(|listed| listed.name == name);
-        values[at.expect("a measure of that name")]
-    })
 }

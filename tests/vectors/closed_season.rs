@@ -59,11 +59,17 @@ impl Season {
         let survey = date_of(first_day(), DAYS_BEFORE_COLDEST + survey_day + 1);
         let month_day =
             |date: NaiveDate| MonthDay::new(date.month(), date.day()).expect("a day of every year");
-        let measures = Measures::new(SeasonSettings {
-            water_year_starts: WaterYearStart(month_day(first_day())),
-            survey_dates: vec![month_day(survey)],
-            volume_windows: Vec::new(),
-        });
+        let measures = Measures::new(
+            SeasonSettings {
+                water_year_starts: WaterYearStart(month_day(first_day())),
+                survey_dates: vec![month_day(survey)],
+                volume_windows: Vec::new(),
+                outflow_before: Vec::new(),
+                melt_shares_before: Vec::new(),
+                arrival_volume_hm3: None,
+            },
+            1.0,
+        );
         let mut engine = Engine::new(lanes, false);
         let block = engine.year(series.view(&series.years[0])).expect("a closed ledger");
         let mut values = vec![0.0; measures.list().len() * block.width];

@@ -80,22 +80,22 @@ fn run_one_band(case: &Case, change: &MonthlyChange) -> YearBlock {
     engine.year(series.view(&series.years[0])).expect("a closed ledger").clone()
 }
 
-/// The stated days of one column of the daily detail.
-fn stated_days(case: &Case, block: &YearBlock, column: fn(&Detail) -> &Vec<f64>) -> Vec<f64> {
+/// The stated days of one value of a day.
+fn stated_days(case: &Case, block: &YearBlock, column: fn(&YearBlock, &Detail, usize) -> f64) -> Vec<f64> {
     let lengths = ["mean_c", "precipitation_mm"]
         .map(|name| case.input_or_none::<Vec<f64>>(name).map(|days| days.len()));
     let days = lengths.into_iter().flatten().next().expect("days are stated");
     let detail = block.detail.as_ref().expect("detail was asked for");
-    (1..=days).map(|day| column(detail)[day * detail.width]).collect()
+    (1..=days).map(|day| column(block, detail, day)).collect()
 }
 
 /// Stated days at one place: what each of them melts, snows and rains, and what is left.
 pub fn days(case: &Case) {
     let block = run_one_band(case, &MonthlyChange::NONE);
-    let snow_mm = stated_days(case, &block, |detail| &detail.snow_mm);
-    let rain_mm = stated_days(case, &block, |detail| &detail.rain_mm);
-    let ice_mm = stated_days(case, &block, |detail| &detail.ice_mm);
-    case.check("melt_mm", &stated_days(case, &block, |detail| &detail.melt_mm));
+    let snow_mm = stated_days(case, &block, |block, _, day| block.snow_mm[day * block.width]);
+    let rain_mm = stated_days(case, &block, |block, _, day| block.rain_mm[day * block.width]);
+    let ice_mm = stated_days(case, &block, |_, detail, day| detail.ice_mm[day * detail.width]);
+    case.check("melt_mm", &stated_days(case, &block, |_, detail, day| detail.melt_mm[day * detail.width]));
     case.check("snow_mm", &snow_mm);
     case.check("rain_mm", &rain_mm);
     case.check("pack_at_end_mm", &ice_mm[ice_mm.len() - 1..]);
@@ -105,8 +105,8 @@ pub fn days(case: &Case) {
 pub fn precipitation_factor(case: &Case) {
     let change = MonthlyChange { precipitation_factor: [case.input("factor"); 12], ..MonthlyChange::NONE };
     let block = run_one_band(case, &change);
-    let rain_mm = stated_days(case, &block, |detail| &detail.rain_mm);
-    let snow_mm = stated_days(case, &block, |detail| &detail.snow_mm);
+    let rain_mm = stated_days(case, &block, |block, _, day| block.rain_mm[day * block.width]);
+    let snow_mm = stated_days(case, &block, |block, _, day| block.snow_mm[day * block.width]);
     let fallen: Vec<f64> = rain_mm.iter().zip(&snow_mm).map(|(rain, snow)| rain + snow).collect();
     let (mean, deviation) = mean_and_deviation(&fallen);
     case.check("each_mm", &fallen);
@@ -118,8 +118,8 @@ pub fn precipitation_factor(case: &Case) {
 /// A shift of temperature: mean, spread, frost days, degree-days.
 pub fn temperature_shift(case: &Case) {
     let block = run_one_band(case, &Warming::default().at(case.input("level_c")));
-    let mean_c = stated_days(case, &block, |detail| &detail.mean_c);
-    let melt_mm = stated_days(case, &block, |detail| &detail.melt_mm);
+    let mean_c = stated_days(case, &block, |_, detail, day| detail.mean_c[day * detail.width]);
+    let melt_mm = stated_days(case, &block, |_, detail, day| detail.melt_mm[day * detail.width]);
     let (mean, deviation) = mean_and_deviation(&mean_c);
     case.check("mean_c", &[mean]);
     case.check("deviation_c", &[deviation]);

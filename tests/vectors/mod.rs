@@ -10,6 +10,7 @@ mod closed_season;
 mod days;
 mod scores;
 mod statistics;
+mod still_year;
 mod trends;
 mod units;
 
@@ -18,7 +19,7 @@ use case::Case;
 /// What a case is run through.
 type Runner = fn(&Case);
 
-const RUNNERS: [(&str, Runner); 22] = [
+const RUNNERS: [(&str, Runner); 23] = [
     ("days", days::days),
     ("precipitation factor", days::precipitation_factor),
     ("temperature shift", days::temperature_shift),
@@ -28,8 +29,9 @@ const RUNNERS: [(&str, Runner); 22] = [
     ("closed season", closed_season::closed_season),
     ("water-year days", calendar::water_year_days),
     ("water years", calendar::water_years),
-    ("melt dates", calendar::melt_dates),
-    ("survey and peak", calendar::survey_and_peak),
+    ("melt dates", still_year::melt_dates),
+    ("survey and peak", still_year::survey_and_peak),
+    ("snow and rain", still_year::snow_and_rain),
     ("cover", calendar::cover),
     ("quantiles", statistics::quantiles),
     ("two-way variance", statistics::two_way),
@@ -72,7 +74,7 @@ fn changes() {
     run(include_str!("changes.toml"));
 }
 
-/// Days of the water year, dates and covers of a year's snow.
+/// Days of the water year, dates, sums, shares and covers of a year's snow.
 #[test]
 fn water_year() {
     run(include_str!("calendar.toml"));

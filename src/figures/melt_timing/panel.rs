@@ -120,7 +120,7 @@ fn row(sheet: &Sheet, area: &Area<'_>, found: &LevelFindings, y: f64, marking: M
     let place = |outcome: Outcome| match outcome {
         Outcome::Value(day) => Some((area.plot.at(day, 0.0).0, y)),
         Outcome::None => Some((area.left, y)),
-        Outcome::NotGone => Some((area.right, y)),
+        Outcome::NotGone | Outcome::NotReached => Some((area.right, y)),
     };
     let all = quantiles(found);
     if all.iter().all(|outcome| outcome.value().is_none()) {
@@ -139,7 +139,7 @@ fn edge_arrow(sheet: &Sheet, area: &Area<'_>, end: Outcome, y: f64, ink: RGBColo
     match end {
         Outcome::Value(_) => Ok(()),
         Outcome::None => arrow(sheet, (area.left - 4.0, y), false, ink),
-        Outcome::NotGone => arrow(sheet, (area.right + 4.0, y), true, ink),
+        Outcome::NotGone | Outcome::NotReached => arrow(sheet, (area.right + 4.0, y), true, ink),
     }
 }
 
@@ -167,6 +167,7 @@ fn lines(found: &LevelFindings, is_reference: bool, starts: WaterYearStart) -> V
     match (periods.q50, found.shift) {
         (Outcome::None, _) => lines.push(("median: nothing to time".to_owned(), LABEL)),
         (Outcome::NotGone, _) => lines.push(("median: snow not gone".to_owned(), LABEL)),
+        (Outcome::NotReached, _) => lines.push(("median: not reached".to_owned(), LABEL)),
         (Outcome::Value(day), _) if is_reference => {
             lines.push((format!("median {}", day_of_month(starts, day)), LABEL));
         }

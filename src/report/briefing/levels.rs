@@ -4,8 +4,8 @@ use super::super::numbers::{DASH, fixed, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
 use super::super::words::period_name;
-use crate::findings::{LEAST_REFERENCE_MM, LevelFindings, MeasureFindings};
-use crate::season::Kind;
+use crate::findings::{LevelFindings, MeasureFindings};
+use crate::season::{Kind, LEAST_REFERENCE_MM, Outcome};
 use maud::{Markup, html};
 
 /// The section.
@@ -65,26 +65,25 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
 
 fn level_cell(reader: Reader, measure: &MeasureFindings, at: &LevelFindings) -> Markup {
     let kind = measure.measure.kind;
-    let undefined = at.periods.none + at.periods.not_gone;
+    let undefined = [
+        (at.periods.none, Outcome::None),
+        (at.periods.not_gone, Outcome::NotGone),
+        (at.periods.not_reached, Outcome::NotReached),
+    ];
+    let undefined: Vec<String> = undefined
+        .into_iter()
+        .filter(|(count, _)| *count > 0)
+        .map(|(count, outcome)| format!("{count} {}", reader.outcome(outcome, kind)))
+        .collect();
     html! {
         (reader.outcome(at.periods.q50, kind))
         @if let Some(shift) = at.shift {
             br;
-            @match kind {
-                Kind::AmountMm => {
-                    (reader.change(shift.median.value))
-                    @if let Some(percent) = at.percent_change { ", " (signed(percent, 0)) " %" }
-                }
-                Kind::DayOfWaterYear => { (signed(shift.median.value, 0)) " d" }
-            }
+            (reader.change_of(kind, shift.median.value))
+            @if let Some(percent) = at.percent_change { ", " (signed(percent, 0)) " %" }
             br;
             @match at.signal_to_spread { Some(ratio) => { (fixed(ratio.value, 2)) " ×" } None => { (DASH) } }
         }
-        @if undefined > 0 {
-            br;
-            @if at.periods.none > 0 { (at.periods.none) " none" }
-            @if at.periods.none > 0 && at.periods.not_gone > 0 { ", " }
-            @if at.periods.not_gone > 0 { (at.periods.not_gone) " not gone" }
-        }
+        @if !undefined.is_empty() { br; (undefined.join(", ")) }
     }
 }

@@ -56,7 +56,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             }
             dl.years { @for year in &record.years { div {
                 dt { (year.water_year) }
-                dd { (reader.outcome(year.values[0].into(), headline.kind)) }
+                dd { (reader.outcome(headline.kind.outcome(year.values[0]), headline.kind)) }
             } } }
         }
     }

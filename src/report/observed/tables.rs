@@ -51,6 +51,7 @@ fn year_row(comparison: &Comparison, year: &ComparedYear, units: UnitSystem) -> 
         Outcome::Value(day) => date_of(year.first, day as usize).to_string(),
         Outcome::None => "none".to_owned(),
         Outcome::NotGone => "not gone".to_owned(),
+        Outcome::NotReached => "not reached".to_owned(),
     };
     let depth = |mm: Option<f64>| optional(mm.map(|mm| units.depth().of(mm)));
     let whole = if year.is_whole { "yes" } else { "no" };
