@@ -114,7 +114,7 @@ pub(super) fn day_of_month(starts: WaterYearStart, day: f64) -> String {
 }
 
 /// The text with a capital at its beginning.
-pub(super) fn sentence(text: &str) -> String {
+pub fn sentence(text: &str) -> String {
     let mut chars = text.chars();
     chars.next().map_or_else(String::new, |first| first.to_uppercase().chain(chars).collect())
 }

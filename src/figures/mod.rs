@@ -22,6 +22,7 @@ mod check;
 #[cfg(test)]
 mod colour_sight;
 
+pub use labels::sentence;
 pub use text_width::text_width;
 
 use crate::calendar::WaterYearStart;

@@ -2,6 +2,7 @@
 
 use super::quantile::quantile;
 use super::resample::{Estimate, Ranked, Resamples};
+use crate::season::LEAST_REFERENCE_MM;
 use crate::units::cubic_hectometres;
 use serde::Serialize;
 
@@ -19,6 +20,8 @@ pub struct Exceeded {
     pub amount_mm: Estimate,
     /// As a volume, hm3.
     pub volume_hm3: Estimate,
+    /// Its change from the reference's, percent; nothing where that is below 10 mm, and at the reference.
+    pub change_pct: Option<f64>,
 }
 
 /// The amounts that 90, 70, 50, 30 and 10 % of all years of all realizations bring at least, with their Monte Carlo
@@ -36,9 +39,19 @@ pub(super) fn exceeded(years: &Ranked, area_km2: f64, resamples: &Resamples) -> 
             chance_pct: EXCEEDANCE_PCT[at],
             amount_mm,
             volume_hm3: amount_mm.map(|mm| cubic_hectometres(mm, area_km2)),
+            change_pct: None,
         }
     };
     (0..SHARES.len()).map(of).collect()
+}
+
+/// Adds the change from the reference's amounts.
+pub(super) fn add_changes(exceeded: &mut [Exceeded], reference: &[Exceeded]) {
+    for (at, before) in exceeded.iter_mut().zip(reference) {
+        let before_mm = before.amount_mm.value;
+        at.change_pct =
+            (before_mm >= LEAST_REFERENCE_MM).then(|| 100.0 * (at.amount_mm.value / before_mm - 1.0));
+    }
 }
 
 /// The amounts alone, mm; nothing where a year has no value.

@@ -3,7 +3,7 @@
 use super::chance::Chances;
 use super::crossing::{Crossing, CrossingRange, crossing_range};
 use super::distribution::Distribution;
-use super::exceedance::{Exceeded, exceeded};
+use super::exceedance::{Exceeded, add_changes, exceeded};
 use super::quantile::{quantile, sorted};
 use super::record_range::RecordRange;
 use super::resample::{Estimate, Ranked, Resamples};
@@ -129,6 +129,11 @@ impl Asked<'_> {
                 }
             }
             of_levels.push(found);
+        }
+        let reference_exceeded = of_levels[levels.reference].exceeded.clone();
+        let (colder, warmer) = of_levels.split_at_mut(levels.reference);
+        for level in colder.iter_mut().chain(&mut warmer[1..]) {
+            add_changes(&mut level.exceeded, &reference_exceeded);
         }
         let ratio = |level_c: f64| {
             let level = of_levels.iter().find(|level| level.level_c == level_c);

@@ -6,9 +6,9 @@ mod levels;
 mod observed;
 mod record;
 
+use super::answer::Answer;
 use super::numbers::counted;
 use super::study::Study;
-use super::words::Answer;
 use super::{cautions, terms};
 use crate::figures::Svg;
 use maud::{DOCTYPE, Markup, PreEscaped, html};

@@ -1,5 +1,6 @@
 //! The report: findings as words, tables, a page and a manifest; bytes in memory. `publish` alone writes them.
 
+mod answer;
 mod briefing;
 mod cautions;
 mod checked;
@@ -13,8 +14,8 @@ mod summary;
 mod tables;
 mod terms;
 mod trends;
-mod words;
 
+pub use answer::{Answer, answer_in_words, period_name};
 pub use briefing::briefing_html;
 pub use checked::Checked;
 pub use daily::{DailyError, daily_csv};
@@ -24,7 +25,6 @@ pub use reader::Reader;
 pub use study::{Input, Origin, Record, Study};
 pub use summary::{daily_manifest_json, manifest_json, summary_json};
 pub use tables::{ReportFile, tables};
-pub use words::{Answer, answer_in_words, period_name};
 
 /// Version of every JSON document we write: a number removed or renamed raises it.
 pub const SCHEMA_VERSION: u32 = 2;

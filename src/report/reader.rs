@@ -111,6 +111,17 @@ impl Reader {
         format!("{} {}", signed(unit.of(pct_per_c), 1), unit.word)
     }
 
+    /// `232 hm³`, `48.1 thousand acre-feet`: a volume of water, to three figures.
+    pub fn volume(self, volume_hm3: f64) -> String {
+        format!("{} {}", self.volume_bare(volume_hm3), self.units.volume().word)
+    }
+
+    /// The same without its unit.
+    pub fn volume_bare(self, volume_hm3: f64) -> String {
+        let volume = self.units.volume().of(volume_hm3);
+        fixed(volume, [9.995, 99.95].iter().map(|limit| usize::from(volume.abs() < *limit)).sum())
+    }
+
     /// A measure's value in words.
     pub fn outcome(self, outcome: Outcome, kind: Kind) -> String {
         match (outcome, kind) {

@@ -1,8 +1,8 @@
 //! `summary.json`: every number that the briefing says or a figure draws; `run.json`: how it came about.
 
 use super::SCHEMA_VERSION;
+use super::answer::Answer;
 use super::study::{Input, Origin, Study};
-use super::words::Answer;
 use crate::baseline::{Baseline, Detrended};
 use crate::basin::BeyondStations;
 use crate::fault::Unlikely;

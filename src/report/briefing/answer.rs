@@ -1,9 +1,9 @@
 //! The answer: the verdict, a line a level, and what it is measured with.
 
+use super::super::answer::{Answer, chance_in_table, towards_shift};
 use super::super::numbers::{DASH, days_moved, fixed, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
-use super::super::words::{Answer, chance_in_table, towards_shift};
 use crate::findings::{Estimate, Findings, MeasureFindings};
 use maud::{Markup, html};
 

@@ -1,9 +1,9 @@
 //! Tables level by level: the basin's measures, and the headline by elevation.
 
+use super::super::answer::period_name;
 use super::super::numbers::{DASH, fixed, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
-use super::super::words::period_name;
 use crate::findings::{LevelFindings, MeasureFindings};
 use crate::season::{Kind, LEAST_REFERENCE_MM, Outcome};
 use maud::{Markup, html};

@@ -1,0 +1,75 @@
+//! The answer in words. Every word hangs on a number of the findings and turns round when the number does.
+
+mod break_even;
+mod chance;
+mod how_sure;
+mod place;
+mod verdict;
+mod volumes;
+mod yardstick;
+
+pub use chance::{chance_in_table, towards_shift};
+pub use yardstick::from_where_on;
+
+use super::reader::Reader;
+use crate::findings::{Findings, LevelFindings, MeasureFindings};
+
+/// The answer to the study's question.
+#[derive(Debug, Clone, Default, PartialEq, serde::Serialize)]
+pub struct Answer {
+    /// One sentence: does warming outweigh the precipitation spread, and from where on?
+    pub verdict: String,
+    /// How much, level by level.
+    pub amounts: Vec<String>,
+    /// What the verdict measures with, and whether another measure would change it.
+    pub yardstick: Vec<String>,
+    /// How sure it is: Monte Carlo error, the record's own uncertainty, and whether chance could hide it.
+    pub how_sure: Vec<String>,
+    /// How much earlier.
+    pub timing: Vec<String>,
+    /// Where.
+    pub elevation: Option<String>,
+    /// What it means for the volume of the melt season.
+    pub volumes: Option<String>,
+    /// How much more precipitation would make up for it.
+    pub break_even: Vec<String>,
+    /// Could chance hide it?
+    pub chances: Vec<String>,
+}
+
+/// Puts the findings into a reader's words.
+pub fn answer_in_words(findings: &Findings, reader: Reader) -> Answer {
+    let Some(headline) = findings.basin.first() else {
+        return Answer { verdict: "Nothing was measured.".to_owned(), ..Answer::default() };
+    };
+    let levels = || headline.levels.iter();
+    let changed = |level: &&LevelFindings| level.shift.is_some();
+    Answer {
+        verdict: verdict::verdict(findings, headline, reader),
+        amounts: levels()
+            .filter(changed)
+            .map(|level| verdict::how_much(findings, headline, level, reader))
+            .collect(),
+        yardstick: yardstick::yardstick(findings, headline, reader),
+        how_sure: how_sure::how_sure(findings, headline, reader),
+        timing: (0..findings.levels_c.len()).filter_map(|at| place::timing(findings, at, reader)).collect(),
+        elevation: place::elevation(findings, reader),
+        volumes: volumes::volumes(findings, reader),
+        break_even: break_even::break_even(findings, headline, reader),
+        chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
+    }
+}
+
+/// `30-year mean 1 April SWE` or, of a date, `30-year median melt-out`.
+pub fn period_name(findings: &Findings, measure: &MeasureFindings) -> String {
+    let statistic = if measure.measure.kind.is_date() { "median" } else { "mean" };
+    format!("{}-year {statistic} {}", findings.years, measure.measure.title)
+}
+
+/// The warmer level nearest to 2 degC above the reference: what a sentence takes where one level must do.
+pub fn telling_level(findings: &Findings) -> Option<usize> {
+    let reference_c = findings.levels_c[findings.reference];
+    let distance = |at: &usize| (findings.levels_c[*at] - reference_c - 2.0).abs();
+    let warmer = findings.reference + 1..findings.levels_c.len();
+    warmer.min_by(|a, b| distance(a).total_cmp(&distance(b)))
+}

@@ -1,0 +1,109 @@
+//! The verdict in one sentence, and how much each level changes.
+
+use super::super::numbers::{fixed, signed};
+use super::super::reader::Reader;
+use super::period_name;
+use crate::findings::{Crossing, CrossingRange, Findings, LevelFindings, MeasureFindings};
+use crate::season::{Kind, LEAST_REFERENCE_MM};
+
+/// A 5-95 % range of fewer pairs is their extremes.
+const LEAST_PAIRS_FOR_A_RANGE: usize = 20;
+
+/// Does warming outweigh the precipitation spread, and from where on?
+pub(super) fn verdict(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> String {
+    let name = period_name(findings, headline);
+    if let Some(spread) = headline.precipitation_spread
+        && headline.measure.kind == Kind::AmountMm
+        && spread.q50 < LEAST_REFERENCE_MM
+    {
+        return format!(
+            "There is hardly any snow to lose: the reference's {name} is {} in the median. Check units, elevations and the \
+             hemisphere if you know better.",
+            reader.amount(spread.q50)
+        );
+    }
+    match headline.outweighs {
+        Crossing::At { level_c, until_c } => {
+            let range = crossing_range(findings, headline.outweighs_range, reader);
+            let from = reader.between_levels(level_c);
+            let (span, elsewhere) = match until_c {
+                None => (format!("From about {from} of warming on{range}"), "up to there"),
+                Some(until_c) => (
+                    format!("From about {from}{range} to {} of warming", reader.between_levels(until_c)),
+                    "elsewhere",
+                ),
+            };
+            format!(
+                "{span}, the warming outweighs the precipitation spread of the {name}; {elsewhere}, precipitation outweighs \
+                 the warming."
+            )
+        }
+        Crossing::NotReached { up_to_c } => {
+            let ratio = headline.levels.last().and_then(|level| level.signal_to_spread);
+            let ratio = ratio.map_or(String::new(), |ratio| {
+                let ratio = fixed(ratio.value, 2);
+                format!(": at {} the shift is {ratio} times the half spread", reader.level(up_to_c))
+            });
+            format!(
+                "Up to {}, warming does not outweigh the precipitation spread of the {name}, precipitation outweighs the \
+                 warming{ratio}.",
+                reader.level(up_to_c)
+            )
+        }
+        Crossing::Unknown => format!(
+            "Whether warming outweighs the precipitation spread of the {name} cannot be said from this study: there is \
+             no level above the reference, or the reference does not spread."
+        ),
+    }
+}
+
+/// ` (Monte Carlo range +1.3 to +1.5)`, where the realizations at hand leave that open.
+pub(super) fn crossing_range(findings: &Findings, range: Option<CrossingRange>, reader: Reader) -> String {
+    let highest = findings.levels_c.last().copied().unwrap_or_default();
+    let words = |end: Option<f64>| match end {
+        Some(level_c) => reader.between_levels_bare(level_c),
+        None => format!("above {}", reader.between_levels_bare(highest)),
+    };
+    match range {
+        Some(CrossingRange { q05_c, q95_c }) if words(q05_c) != words(q95_c) => {
+            format!(" (Monte Carlo range {} to {})", words(q05_c), words(q95_c))
+        }
+        _ => String::new(),
+    }
+}
+
+/// How much the headline measure changes at a level, and whether that outweighs.
+pub(super) fn how_much(
+    findings: &Findings,
+    headline: &MeasureFindings,
+    at: &LevelFindings,
+    reader: Reader,
+) -> String {
+    let Some(shift) = at.shift else {
+        return String::new();
+    };
+    let change_mm = shift.median.value;
+    let change = if change_mm == 0.0 {
+        "does not change".to_owned()
+    } else {
+        format!("{} by {}", if change_mm < 0.0 { "falls" } else { "rises" }, reader.amount(change_mm.abs()))
+    };
+    let percent = at.percent_change.map_or(String::new(), |percent| format!(" ({} %)", signed(percent, 0)));
+    let ratio = at.signal_to_spread.map_or(String::new(), |ratio| {
+        let error = ratio.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
+        let word = if ratio.value > 1.0 { "outweighs" } else { "does not outweigh" };
+        format!("; that is {}{error} times the half spread, so it {word} it", fixed(ratio.value, 2))
+    });
+    let range = if shift.pairs >= LEAST_PAIRS_FOR_A_RANGE {
+        format!(", 90 % of them between {}", reader.change_and_change(shift.q05, shift.q95))
+    } else {
+        String::new()
+    };
+    let realizations = if shift.pairs == 1 { "realization" } else { "realizations" };
+    format!(
+        "At {}, the {} {change}{percent}: the median over {} {realizations}, each against itself{range}{ratio}.",
+        reader.level(at.level_c),
+        period_name(findings, headline),
+        shift.pairs,
+    )
+}
