@@ -8,6 +8,7 @@ mod failure;
 mod input;
 mod last_words;
 mod output;
+mod own_years;
 mod progress;
 mod start;
 mod study;

@@ -4,8 +4,9 @@ use super::arguments::Shared;
 use super::assemble::{Ready, assemble};
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
+use super::own_years::own_years;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
-use crate::ensemble::{Halt, Plan, record_years, run as run_ensemble};
+use crate::ensemble::{Halt, Plan, RecordYear, run as run_ensemble};
 use crate::fault::Fault;
 use crate::figures::{FIGURES, Setting, of_sites};
 use crate::findings::{Findings, Questions, answer};
@@ -56,9 +57,11 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         counted(ready.basin.bands.len(), "band")
     ));
     let findings = in_pool(shared, || find(&ready, &measures, &progress))??;
+    let (years, record) = own_years(&ready, &measures)?;
+    let findings = Findings { record, ..findings };
 
     progress.stage("writing figures, tables and briefing");
-    let study = describe(&ready, &measures, &findings, path, shared)?;
+    let study = describe(&ready, &measures, years, &findings, path, shared);
     let answer = answer_in_words(&findings, study.mean_change_sd_pct, study.reader);
     let files = write_files(&study, &answer)?;
     if is_interrupted() {
@@ -142,16 +145,13 @@ fn halted(halt: Halt) -> Failure {
 fn describe<'a>(
     ready: &'a Ready,
     measures: &'a Measures,
+    years: Vec<RecordYear>,
     findings: &'a Findings,
     path: &Path,
     shared: &Shared,
-) -> Result<Study<'a>, Failure> {
+) -> Study<'a> {
     let scenario = &ready.scenario;
-    let reference = scenario.warming.warming.at(scenario.warming.levels_c[scenario.warming.reference]);
-    let lanes = ready.lanes(&[reference]);
-    let years =
-        record_years(&lanes, measures, &ready.weather).map_err(|open| Failure::Ours(open.to_string()))?;
-    Ok(Study {
+    Study {
         title: &scenario.title,
         reader: ready.reader(),
         basin: &ready.basin,
@@ -176,7 +176,7 @@ fn describe<'a>(
         defaults: ready.defaults.iter().map(|default| (default.key.clone(), default.value.clone())).collect(),
         unlikely: &ready.unlikely,
         origin: ready.origin("study", path, shared),
-    })
+    }
 }
 
 fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Failure> {

@@ -10,7 +10,7 @@ mod watch;
 
 pub use climate::{BandClimate, WinterMonths, band_climates};
 pub use plan::Plan;
-pub use record::{RecordYear, record_years};
+pub use record::{RecordRun, RecordYear};
 pub use run::run;
 pub use seasons::Seasons;
 pub use watch::{Halt, Silent, Watch};

@@ -4,6 +4,7 @@ use super::chance::Chances;
 use super::crossing::{Crossing, CrossingRange, crossing, crossing_range};
 use super::distribution::Distribution;
 use super::quantile::{quantile, sorted};
+use super::record::RecordFindings;
 use super::resample::{Estimate, Ranked, Resamples};
 use super::shift::{Shift, percent_change};
 use super::spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
@@ -47,6 +48,9 @@ pub struct Findings {
     /// The model against observed snow, one entry a site. No ensemble is asked for it: whoever has it adds it.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub comparisons: Vec<Comparison>,
+    /// The record's own years. No ensemble is asked for them either.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub record: Option<RecordFindings>,
 }
 
 /// Findings of one band.
@@ -154,6 +158,7 @@ pub fn answer(seasons: &Seasons, questions: &Questions<'_>, watch: &dyn Watch) -
             })
             .collect(),
         comparisons: Vec::new(),
+        record: None,
     })
 }
 
