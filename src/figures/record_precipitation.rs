@@ -10,7 +10,7 @@ use super::theme::{
     BAND, DRY, EDGE, INK, LABEL, Lettering, MARGIN_PX, NAME, NOTE, ONE_OF_MANY, WET, WIDTH_PX,
 };
 use super::{Figure, Setting, Svg};
-use crate::findings::{Findings, RecordPrecipitation};
+use crate::findings::{Findings, RecordPrecipitation, YearPrecipitation};
 use crate::units::Unit;
 use words::Words;
 
@@ -48,7 +48,7 @@ fn paint(precipitation: &RecordPrecipitation, setting: &Setting<'_>, words: &Wor
     let heading = Paragraphs::heading(setting.study_title, &words.title, &words.sample);
     let key = Paragraphs::key(&words.key);
     let depth = setting.units.depth();
-    let highest_mm = precipitation.years.iter().map(|year| year.total_mm()).fold(0.0, f64::max);
+    let highest_mm = precipitation.years.iter().map(YearPrecipitation::total_mm).fold(0.0, f64::max);
     let ticks = AmountTicks::up_to(depth.of(highest_mm), STEPS);
     let tick_width = ticks.ticks.iter().map(|(_, label)| LABEL.width(label)).fold(0.0, f64::max);
     let named = named(precipitation, words);

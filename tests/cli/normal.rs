@@ -113,7 +113,7 @@ fn the_tables_agree_with_the_daily_table() {
         let survey = daily.iter().filter(|row| row[0].ends_with("-03-31") && row[1] == band);
         survey.map(|row| row[row.len() - 1].parse().unwrap()).collect()
     };
-    let [low, high] = ["1", "2"].map(|band| on(band));
+    let [low, high] = ["1", "2"].map(on);
     let median = |swe: &[f64]| {
         let mut swe = swe.to_vec();
         swe.sort_by(f64::total_cmp);
