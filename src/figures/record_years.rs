@@ -35,7 +35,7 @@ const YEAR_STEPS: [i32; 6] = [1, 2, 5, 10, 20, 50];
 fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let record = findings.record.as_ref()?;
     let span = span(record)?;
-    let words = Words::of(record, setting.units);
+    let words = Words::of(record, !findings.comparisons.is_empty(), setting.units);
     let rows = rows::of(findings, record);
     let text = paint(record, &span, &rows, setting, &words).ok()?;
     Some(Svg { text, alt: words.alt, caption: words.caption, title: words.title })

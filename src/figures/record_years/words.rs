@@ -19,7 +19,7 @@ pub(super) struct Words {
 }
 
 impl Words {
-    pub fn of(record: &RecordFindings, units: UnitSystem) -> Self {
+    pub fn of(record: &RecordFindings, has_sites: bool, units: UnitSystem) -> Self {
         let title = title(record);
         let headline = &record.headline.title;
         let name = sentence(headline);
@@ -43,10 +43,7 @@ impl Words {
                 baseline.first, baseline.last, baseline.in_use
             ),
             normal: ["normal".to_owned(), size_and_unit(units, normal)],
-            key: "Each stem: a water year, named for the calendar year in which it ends; filled: a baseline year, hollow: \
-                  another. Grey with a cross below: left out. Dashed: the normal, the baseline years' medians of the bands, \
-                  weighted by area. A square: the site has readings in that year."
-                .to_owned(),
+            key: key(record, has_sites),
             caption: format!(
                 "{name} of the basin mean in each water year of the record, run as observed at the reference, and the water \
                  years left out, with the kinds of reason in the rows below; one year can have several. Realizations are drawn \
@@ -57,6 +54,21 @@ impl Words {
             title,
         }
     }
+}
+
+/// What the marks mean, of those that occur.
+fn key(record: &RecordFindings, has_sites: bool) -> String {
+    let mut key = "Each stem: a water year, named for the calendar year in which it ends; filled: a baseline year, hollow: \
+                   another."
+        .to_owned();
+    if !record.left_out.is_empty() {
+        key += " Grey with a cross below: left out.";
+    }
+    key += " Dashed: the normal, the baseline years' medians of the bands, weighted by area.";
+    if has_sites {
+        key += " A square: the site has readings in that year.";
+    }
+    key
 }
 
 /// `38 of 40 water years are in use; 2 are left out, both for missing days`.

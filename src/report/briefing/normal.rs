@@ -14,7 +14,8 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
         h2 { "Percent of median" }
         p {
             "Median: of the baseline years, " (baseline_years_in_words(&record.baseline_years)) ", at the reference, band by band. \
-             A basin's percentage is its snow water over the sum of the bands' medians, not a mean of their percentages."
+             A basin's percentage is its snow water over the sum of the bands' medians, not a mean of their percentages; \
+             each band has its own median year, so the basin's need not stand at 100 %."
         }
         @for on in &record.percent_of_median { (on_date(study, on)) }
         @if let Some(sentence) = record.percent_of_median.first().and_then(|on| hidden(findings, on, reader)) { p { (sentence) } }
