@@ -24,6 +24,9 @@ pub const MONTHS: [&str; 12] = [
     "December",
 ];
 
+/// Dates that every year has.
+pub const COMMON_DATES: usize = 365;
+
 /// A day that exists in every year; 29 February does not qualify.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash)]
 pub struct MonthDay {
@@ -124,6 +127,13 @@ pub fn day_of_water_year(first: NaiveDate, day: MonthDay) -> usize {
     let same = day.in_year(first.year());
     let date = if same >= first { same } else { day.in_year(first.year() + 1) };
     days_between(first, date) + 1
+}
+
+/// Days of the water year, counted from 1, of the 365 dates that every year has, in the year whose first day is `first`:
+/// 29 February is left out, so that the same place stands for the same date in every year.
+pub fn days_of_common_dates(first: NaiveDate) -> impl Iterator<Item = usize> {
+    let dates = first.iter_days().zip(1..);
+    dates.filter(|(date, _)| (date.month(), date.day()) != (2, 29)).map(|(_, day)| day).take(COMMON_DATES)
 }
 
 /// The date of day `day` (from 1) of the water year that starts on `first`.

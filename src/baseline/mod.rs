@@ -2,7 +2,8 @@
 //!
 //! A trend or a step in the record says how far its years stand for one climate. `seasons` makes yearly values of it;
 //! `mann_kendall`, `theil_sen` and `pettitt` ask them for a trend, its size and a step; `wilson` is the interval of a
-//! count over the record's years; `detrend` takes a trend of temperature out. A test sees nothing of a series but its
+//! count over the record's years; `detrend` takes a trend of temperature out; `years` says of which years a normal is the
+//! median. A test sees nothing of a series but its
 //! `ranks`, years and values.
 
 mod detrend;
@@ -14,6 +15,7 @@ mod seasons;
 mod tests;
 mod theil_sen;
 mod wilson;
+mod years;
 
 pub use detrend::{Detrended, detrend};
 pub use mann_kendall::{MannKendall, ScoreTest, mann_kendall};
@@ -21,6 +23,7 @@ pub use pettitt::{Pettitt, pettitt};
 pub use seasons::{SeasonYears, Seasons, Yearly};
 pub use theil_sen::{TheilSen, theil_sen};
 pub use wilson::wilson;
+pub use years::{BASELINE_YEARS_KEY, BaselineChoice, BaselineYears, ENOUGH_BASELINE_YEARS, USUAL_BASELINE};
 
 use crate::calendar::MonthDay;
 use crate::fault::Unlikely;

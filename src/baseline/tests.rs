@@ -121,3 +121,32 @@ fn too_few_years_are_not_detrended() {
     assert_eq!(detrend(&mut after, april(), 2005), None);
     assert_eq!(after, before);
 }
+
+fn water_years(years: std::ops::RangeInclusive<i32>) -> Vec<YearSpan> {
+    let first = |year: i32| NaiveDate::from_ymd_opt(year - 1, 10, 1).unwrap();
+    let span =
+        |year: i32| YearSpan { water_year: year, first: first(year), start: 0, days: 365, follows: false };
+    years.map(span).collect()
+}
+
+/// The rule is the method's: 1991-2020 where at least 20 of its years are in use, else all years in use.
+#[test]
+fn baseline_years_are_the_usual_ones_where_enough_are_in_use() {
+    let of = |stated, years| BaselineYears::of(stated, &water_years(years)).unwrap();
+    let period = |years: &BaselineYears| (years.first, years.last, years.in_use, years.choice);
+    assert_eq!(period(&of(None, 1985..=2024)), (1991, 2020, 30, BaselineChoice::Usual));
+    assert_eq!(period(&of(None, 2001..=2024)), (1991, 2020, 20, BaselineChoice::Usual));
+    assert_eq!(period(&of(None, 2002..=2024)), (2002, 2024, 23, BaselineChoice::AllInUse));
+    assert_eq!(period(&of(Some([1981, 2010]), 1985..=2024)), (1981, 2010, 26, BaselineChoice::Stated));
+    let usual = of(None, 1985..=2024);
+    assert_eq!([1990, 1991, 2020, 2021].map(|year| usual.holds(year)), [false, true, true, false]);
+}
+
+/// A short record is nobody's choice; a stated period of few years is.
+#[test]
+fn few_baseline_years_are_worth_a_second_look_where_they_are_stated() {
+    let unlikely = |stated, years| BaselineYears::of(stated, &water_years(years)).unwrap().unlikely();
+    assert!(unlikely(None, 2001..=2006).is_none() && unlikely(Some([1991, 2010]), 1985..=2024).is_none());
+    assert!(unlikely(Some([1991, 2009]), 1985..=2024).unwrap().why.contains("1991 to 2009, 19 are in use"));
+    assert!(BaselineYears::of(Some([1950, 1984]), &water_years(1985..=2024)).is_err());
+}

@@ -3,7 +3,9 @@
 use super::arguments::Shared;
 use super::failure::Failure;
 use super::input::{InputFile, ScenarioFile, missing_file, read_data, read_scenario};
-use crate::baseline::{Baseline, Detrended, LEAST_YEARS, detrend};
+use crate::baseline::{
+    BASELINE_YEARS_KEY, Baseline, BaselineChoice, BaselineYears, Detrended, LEAST_YEARS, detrend,
+};
 use crate::basin::Basin;
 use crate::fault::{Fault, Unlikely};
 use crate::fit::{Comparison, Model, Site, compare};
@@ -30,6 +32,8 @@ pub(super) struct Ready {
     pub detrended: Option<Detrended>,
     /// Trends and steps of the record.
     pub baseline: Option<Baseline>,
+    /// The years whose median is the normal.
+    pub baseline_years: BaselineYears,
     pub unlikely: Vec<Unlikely>,
     pub defaults: Vec<DefaultInForce>,
     /// What was observed at each site of the scenario.
@@ -75,12 +79,17 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             correct_catch(&mut weather, scenario.weather.gauge_multiplier, scenario.snow.rain_snow);
             let survey = scenario.season.survey_dates[0];
             let mut drawn_from = weather.clone();
-            let detrended = match scenario.weather.detrend_to {
-                Some(year) => Some(
-                    detrend(&mut drawn_from, survey, year)
-                        .ok_or_else(|| too_short_to_detrend(&weather, &file, shared))?,
-                ),
-                None => None,
+            let detrended = scenario.weather.detrend_to.and_then(|year| {
+                let detrended = detrend(&mut drawn_from, survey, year);
+                detrended.or_else(|| {
+                    faults.push(too_short_to_detrend(&weather));
+                    None
+                })
+            });
+            let stated = scenario.weather.baseline_years;
+            let baseline_years = BaselineYears::of(stated, &weather.years).map_err(|fault| vec![fault]);
+            let Some(baseline_years) = take(baseline_years, &mut faults).filter(|_| faults.is_empty()) else {
+                return Err(Failure::input(&faults, &file.name, &file.text, shared.is_coloured()));
             };
             let baseline = Baseline::of(&weather, survey);
             let mut files = vec![file.clone(), bands_file, weather_file];
@@ -100,7 +109,9 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 observations.push(observed);
                 files.push(file);
             }
-            let defaults = draft.defaults;
+            unlikely.extend(baseline_years.unlikely());
+            let mut defaults = draft.defaults;
+            note_baseline_years(&baseline_years, &mut defaults);
             let ready = Ready {
                 scenario,
                 basin,
@@ -109,6 +120,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 drawn_from,
                 detrended,
                 baseline,
+                baseline_years,
                 unlikely,
                 defaults,
                 observed: observations,
@@ -151,14 +163,26 @@ fn read_record_of(draft: &Draft, folder: &Path) -> Result<Option<(Record, InputF
     Ok(Some((record, file)))
 }
 
-fn too_short_to_detrend(weather: &Series, file: &InputFile, shared: &Shared) -> Failure {
-    let fault = Fault::key(
+/// Notes the baseline years among the other defaults of `[weather]`, unless they were typed.
+fn note_baseline_years(years: &BaselineYears, defaults: &mut Vec<DefaultInForce>) {
+    if years.choice == BaselineChoice::Stated {
+        return;
+    }
+    let after = defaults.iter().rposition(|default| default.key.starts_with("weather."));
+    let noted = DefaultInForce {
+        key: BASELINE_YEARS_KEY.to_owned(),
+        value: format!("[{}, {}]", years.first, years.last),
+    };
+    defaults.insert(after.map_or(defaults.len(), |at| at + 1), noted);
+}
+
+fn too_short_to_detrend(weather: &Series) -> Fault {
+    Fault::key(
         "weather.detrend_to",
         format!("a trend asked of {} usable water years", weather.years.len()),
         format!("at least {LEAST_YEARS}"),
         "take it out: no trend can be told from so few years",
-    );
-    Failure::input(&[fault], &file.name, &file.text, shared.is_coloured())
+    )
 }
 
 /// Reads the file of every site whose table has no fault.

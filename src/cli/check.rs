@@ -43,6 +43,7 @@ fn describe<'a>(ready: &'a Ready, seasons: &'a Seasons, climates: &'a [BandClima
         seasons,
         climates,
         baseline: ready.baseline.as_ref(),
+        baseline_years: &ready.baseline_years,
         detrended: ready.detrended.as_ref(),
         sites: ready.sites(),
         season: &scenario.season,

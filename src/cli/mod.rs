@@ -9,6 +9,7 @@ mod failure;
 mod input;
 mod last_words;
 mod output;
+mod own_years;
 mod progress;
 mod runs;
 mod start;

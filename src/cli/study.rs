@@ -4,9 +4,10 @@ use super::arguments::Shared;
 use super::assemble::{Ready, assemble};
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
+use super::own_years::own_years;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
 use super::runs;
-use crate::ensemble::record_years;
+use crate::ensemble::RecordYear;
 use crate::fault::Fault;
 use crate::figures::{FIGURES, Setting, of_sites};
 use crate::findings::Findings;
@@ -55,9 +56,11 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         counted(ready.basin.bands.len(), "band")
     ));
     let findings = in_pool(shared, || runs::find(&ready, &measures, &progress))??;
+    let (years, record) = own_years(&ready, &measures)?;
+    let findings = Findings { record, ..findings };
 
     progress.stage("writing figures, tables and briefing");
-    let study = describe(&ready, &measures, &findings, path, shared)?;
+    let study = describe(&ready, &measures, years, &findings, path, shared);
     let answer = answer_in_words(&findings, study.reader);
     let files = write_files(&study, &answer)?;
     if is_interrupted() {
@@ -99,16 +102,13 @@ fn in_pool<T: Send>(shared: &Shared, work: impl FnOnce() -> T + Send) -> Result<
 fn describe<'a>(
     ready: &'a Ready,
     measures: &'a Measures,
+    years: Vec<RecordYear>,
     findings: &'a Findings,
     path: &Path,
     shared: &Shared,
-) -> Result<Study<'a>, Failure> {
+) -> Study<'a> {
     let scenario = &ready.scenario;
-    let reference = scenario.warming.warming.at(scenario.warming.levels_c[scenario.warming.reference]);
-    let lanes = ready.lanes(&[reference]);
-    let years =
-        record_years(&lanes, measures, &ready.weather).map_err(|open| Failure::Ours(open.to_string()))?;
-    Ok(Study {
+    Study {
         title: &scenario.title,
         reader: ready.reader(),
         basin: &ready.basin,
@@ -133,7 +133,7 @@ fn describe<'a>(
         defaults: ready.defaults.iter().map(|default| (default.key.clone(), default.value.clone())).collect(),
         unlikely: &ready.unlikely,
         origin: ready.origin("study", path, shared),
-    })
+    }
 }
 
 fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Failure> {

@@ -12,7 +12,7 @@ mod watch;
 
 pub use climate::{BandClimate, WinterMonths, band_climates};
 pub use plan::Plan;
-pub use record::{RecordYear, record_years};
+pub use record::{RecordRun, RecordYear};
 pub use run::{run, run_records};
 pub use seasons::{BasinSeasons, Seasons};
 pub use swe_days::{COUNTED_DAYS, SweBins, SweDays};

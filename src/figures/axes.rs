@@ -85,6 +85,11 @@ impl Calendar {
         Self { starts, days: days.start - pad..days.end + pad }
     }
 
+    /// Shows these days and no others.
+    pub fn exactly(days: Range<f64>, starts: WaterYearStart) -> Self {
+        Self { starts, days }
+    }
+
     /// The months that are shown, in order.
     pub fn months(&self) -> Vec<Month> {
         let mut months: Vec<Month> = Vec::new();

@@ -85,7 +85,13 @@ fn days_drawn(panels: &[Panel<'_>]) -> std::ops::Range<f64> {
 }
 
 /// Month starts with long ticks, the months' names between them.
-fn calendar_axis(sheet: &Sheet, calendar: &Calendar, plot: &Plot, [left, right]: [f64; 2], y: f64) -> Drawn {
+pub(super) fn calendar_axis(
+    sheet: &Sheet,
+    calendar: &Calendar,
+    plot: &Plot,
+    [left, right]: [f64; 2],
+    y: f64,
+) -> Drawn {
     let line = Stroke::solid(EDGE, 1.0);
     let x_of = |day: f64| plot.at(day, 0.0).0;
     sheet.line(&[(left, y), (right, y)], line)?;

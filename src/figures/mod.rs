@@ -12,6 +12,8 @@ mod melt_timing;
 mod observed_swe;
 mod page;
 mod reading;
+mod record_precipitation;
+mod record_years;
 mod sheet;
 mod swe_by_level;
 mod text_width;
@@ -42,7 +44,8 @@ pub struct Figure {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 2] = [swe_by_level::FIGURE, melt_timing::FIGURE];
+pub const FIGURES: [Figure; 4] =
+    [swe_by_level::FIGURE, melt_timing::FIGURE, record_years::FIGURE, record_precipitation::FIGURE];
 
 /// A figure of which there is one a site with observed snow.
 #[derive(Debug, Clone, Copy)]

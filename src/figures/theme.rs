@@ -25,6 +25,13 @@ pub const BAND: RGBColor = RGBColor(0xe9, 0xef, 0xf2);
 /// What the model makes of the record, beside what was observed in ink.
 pub const MODELLED: RGBColor = WARMER[0];
 
+/// The wettest year; lighter than the driest, so that they part in grey.
+pub const WET: RGBColor = WARMER[0];
+/// The driest year.
+pub const DRY: RGBColor = WARMER[3];
+/// A year among all.
+pub const ONE_OF_MANY: RGBColor = RGBColor(0x9d, 0xab, 0xb3);
+
 /// Warmer levels, from the least warm: lightness falls all the way, so that the order stands in grey.
 const WARMER: [RGBColor; 4] = [
     RGBColor(0x42, 0x89, 0xaf),

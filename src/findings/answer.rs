@@ -2,6 +2,7 @@
 
 use super::break_even::BreakEven;
 use super::measure::{Asked, Found, MeasureFindings};
+use super::record::RecordFindings;
 use super::record_range::{RecordRange, Refit};
 use super::resample::Resamples;
 use super::through_year::SweThroughYear;
@@ -74,6 +75,9 @@ pub struct Findings {
     /// The model against observed snow, one entry a site. No ensemble is asked for it: whoever has it adds it.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub comparisons: Vec<Comparison>,
+    /// The record's own years. No ensemble is asked for them either.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub record: Option<RecordFindings>,
 }
 
 /// Findings of one band.
@@ -124,6 +128,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         basin,
         bands: bands.collect(),
         comparisons: Vec::new(),
+        record: None,
     })
 }
 

@@ -1,6 +1,6 @@
 //! Findings: the questions that a study answers, one a file, and the numbers that answer them (method, section 10).
 //!
-//! Everything that a figure draws or a sentence says about an ensemble stands in [`Findings`] and nowhere else.
+//! Everything that a figure draws or a sentence says about an ensemble, and about the record's own years, stands in [`Findings`] and nowhere else.
 
 mod answer;
 mod break_even;
@@ -9,8 +9,11 @@ mod crossing;
 mod distribution;
 mod exceedance;
 mod measure;
+mod normal;
 mod odds;
+mod precipitation;
 mod quantile;
+mod record;
 mod record_range;
 mod resample;
 mod shift;
@@ -27,7 +30,13 @@ pub use crossing::{Crossing, CrossingRange, crossing};
 pub use distribution::{DOTS, Distribution};
 pub use exceedance::{EXCEEDANCE_PCT, Exceeded};
 pub use measure::{LevelFindings, MeasureFindings};
+pub use normal::{
+    CLASS_LIMITS_PCT, LevelPercents, MedianSwe, NormalQuestions, PercentOfMedian, UNSTABLE_BELOW_SHARE,
+    percent_of_median,
+};
+pub use precipitation::{RecordPrecipitation, YearPrecipitation};
 pub use quantile::{quantile, sorted};
+pub use record::{OwnYear, RecordFindings, RecordQuestions};
 pub use record_range::{
     REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Range, RecordRange, RecordRangeLevel, Refit,
 };

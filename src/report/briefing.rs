@@ -3,6 +3,7 @@
 mod answer;
 mod assumed;
 mod levels;
+mod normal;
 mod observed;
 mod record;
 
@@ -57,6 +58,7 @@ pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg], of_sit
                     }
                     (levels::section(study))
                     (record::section(study))
+                    (normal::section(study))
                     (observed::section(study, of_sites))
                     (assumed::section(study))
                     (list_section("Cautions", &cautions::cautions(study.reader)))

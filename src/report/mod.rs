@@ -5,6 +5,7 @@ mod briefing;
 mod cautions;
 mod checked;
 mod daily;
+mod normal;
 pub mod numbers;
 mod observed;
 mod publish;

@@ -3,7 +3,7 @@
 use super::SCHEMA_VERSION;
 use super::answer::Answer;
 use super::study::{Input, Origin, Study};
-use crate::baseline::{Baseline, Detrended};
+use crate::baseline::{Baseline, BaselineYears, Detrended};
 use crate::basin::BeyondStations;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
@@ -147,6 +147,7 @@ struct Parameters<'a> {
     reference_c: f64,
     warming: &'a Warming,
     detrended: Option<&'a Detrended>,
+    baseline_years: Option<&'a BaselineYears>,
     realizations: Realizations,
     report_units: UnitSystem,
 }
@@ -208,6 +209,7 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
             reference_c: findings.levels_c[findings.reference],
             warming: study.warming,
             detrended: study.record.detrended,
+            baseline_years: findings.record.as_ref().map(|record| &record.baseline_years),
             realizations: Realizations {
                 generator: "year-blocks",
                 count: findings.realizations,

@@ -1,5 +1,6 @@
 //! Tables as CSV: units in the header, uncertainty beside every estimate, empty where there is no number.
 
+use super::normal::normal_tables;
 use super::observed::observed_tables;
 use super::study::Study;
 use crate::findings::{Chance, Distribution, Estimate, LevelFindings, MeasureFindings};
@@ -33,6 +34,7 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
         tables.push((format!("tables/bands-{group}.csv"), table(bands.collect(), units, kinds)));
     }
     tables.push(("tables/record-years.csv".to_owned(), record_years(study)));
+    tables.extend(normal_tables(study));
     tables.extend(observed_tables(&findings.comparisons, units));
     tables
 }

@@ -2,7 +2,7 @@
 
 use super::elevation::Height;
 use super::format::{read_date, read_format};
-use super::section::Section;
+use super::section::{Section, described};
 use crate::fault::Fault;
 use crate::snow::GaugeMultiplier;
 use crate::units::{DepthUnit, TemperatureUnit};
@@ -39,6 +39,8 @@ pub struct WeatherTyped {
     pub gauge_multiplier: GaugeMultiplier,
     /// The year to which a trend of temperature is taken out of the years that realizations are drawn from.
     pub detrend_to: Option<i32>,
+    /// First and last baseline year, where they are stated.
+    pub baseline_years: Option<[i32; 2]>,
 }
 
 /// A fall of an accumulating gauge beyond this is a reset, mm.
@@ -58,6 +60,7 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<RecordSource>, Option<We
     let format = read_format(&mut section);
     let limits = read_limits(&mut section);
     let detrend_to = section.whole_in("detrend_to", 1700..=2200, 2005).map(|year| year as i32);
+    let baseline_years = read_baseline_years(&mut section);
     section.finish();
     let source = match (file, date, temperature, precipitation, format) {
         (Some(file), Some(date), Some(temperature), Some(precipitation), Some(format)) => {
@@ -67,7 +70,7 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<RecordSource>, Option<We
     };
     let typed = match (source.clone(), station_elevation_m, gauge_multiplier) {
         (Some(source), Some(station_elevation_m), Some(gauge_multiplier)) => {
-            Some(WeatherTyped { source, station_elevation_m, gauge_multiplier, detrend_to })
+            Some(WeatherTyped { source, station_elevation_m, gauge_multiplier, detrend_to, baseline_years })
         }
         _ => None,
     };
@@ -102,6 +105,25 @@ fn read_limits(section: &mut Section<'_>) -> Limits {
             5.0..=200.0,
             "degC from the median of the time of year beyond which a temperature is taken as missing; 25 is common",
         ),
+    }
+}
+
+/// Two water years, the first not after the last. Which years they are without it only the record can tell.
+fn read_baseline_years(section: &mut Section<'_>) -> Option<[i32; 2]> {
+    let value = section.value("baseline_years")?;
+    let years = if value.is_array() { section.years("baseline_years")? } else { Vec::new() };
+    match years.as_slice() {
+        [first, last] if first <= last => Some([*first, *last]),
+        other => {
+            let found = if value.is_array() { format!("{other:?}") } else { described(value) };
+            section.fault(Fault::key(
+                section.path_of("baseline_years"),
+                found,
+                "two water years, the first and the last of the period",
+                "baseline_years = [1991, 2020], for example",
+            ));
+            None
+        }
     }
 }
 

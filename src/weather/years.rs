@@ -74,6 +74,26 @@ pub enum Why {
 }
 
 impl Why {
+    /// Every kind of reason for which a year is left out, in the order in which they are looked for.
+    pub const KINDS: [&'static str; 5] = [
+        "as the scenario asks",
+        "at the record's ends",
+        "for missing days",
+        "for a temperature gap",
+        "for a season's odd mean",
+    ];
+
+    /// Which of [`KINDS`](Self::KINDS) it is, without its numbers.
+    pub fn kind(&self) -> &'static str {
+        Self::KINDS[match self {
+            Self::AsStated => 0,
+            Self::BeyondRecord { .. } => 1,
+            Self::MissingDays { .. } => 2,
+            Self::TemperatureGap { .. } => 3,
+            Self::SeasonMean { .. } => 4,
+        }]
+    }
+
     /// The reason in a sentence, temperatures in the reader's unit.
     pub fn words(&self, units: UnitSystem) -> String {
         match self {

@@ -5,6 +5,7 @@ mod corpus;
 mod data_faults;
 mod interrupt;
 mod keys;
+mod normal;
 mod observed;
 mod results;
 mod scenario_faults;

@@ -52,12 +52,9 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
                 (headline.title) " of the basin mean by water year"
                 @if let Some([mean, variation]) = record.headline_mean_and_variation() {
                     ": mean " (reader.amount(mean)) ", coefficient of variation " (fixed(variation, 2))
-                } "."
+                } ". A figure on this page draws each year, and all that was measured of it stands in "
+                code { "tables/record-years.csv" } "."
             }
-            dl.years { @for year in &record.years { div {
-                dt { (year.water_year) }
-                dd { (reader.outcome(headline.kind.outcome(year.values[0]), headline.kind)) }
-            } } }
         }
     }
 }

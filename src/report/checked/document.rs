@@ -3,7 +3,7 @@
 use super::super::SCHEMA_VERSION;
 use super::Checked;
 use super::observed::SiteDocument;
-use crate::baseline::{Baseline, Detrended, wilson};
+use crate::baseline::{Baseline, BaselineYears, Detrended, wilson};
 use crate::basin::{Band, BeyondStations};
 use crate::ensemble::BandClimate;
 use crate::perturb::Warming;
@@ -35,6 +35,7 @@ struct Document<'a> {
     area_beyond_stations: Option<BeyondStations>,
     bands: Vec<BandDocument<'a>>,
     baseline: Option<&'a Baseline>,
+    baseline_years: &'a BaselineYears,
     detrended: Option<&'a Detrended>,
     observed_swe: Vec<SiteDocument<'a>>,
     season: &'a SeasonSettings,
@@ -113,6 +114,7 @@ impl Checked<'_> {
                 })
                 .collect(),
             baseline: self.baseline,
+            baseline_years: self.baseline_years,
             detrended: self.detrended,
             observed_swe: self.sites.iter().map(SiteDocument::of).collect(),
             season: self.season,

@@ -8,7 +8,7 @@ mod record;
 
 use super::numbers::{counted, fixed, signed};
 use super::reader::Reader;
-use crate::baseline::{Baseline, Detrended, Seasons};
+use crate::baseline::{Baseline, BaselineYears, Detrended, Seasons};
 use crate::basin::{Basin, BeyondStations};
 use crate::ensemble::BandClimate;
 use crate::fault::Unlikely;
@@ -47,6 +47,8 @@ pub struct Checked<'a> {
     pub climates: &'a [BandClimate],
     /// Trends and steps, precipitation corrected for catch.
     pub baseline: Option<&'a Baseline>,
+    /// The years whose median is the normal.
+    pub baseline_years: &'a BaselineYears,
     /// The trend that was taken out for the realizations.
     pub detrended: Option<&'a Detrended>,
     /// Sites with observed snow.

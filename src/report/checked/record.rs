@@ -1,5 +1,6 @@
 //! The record: what there is, what is left out, what it measured.
 
+use super::super::normal::baseline_years_in_words;
 use super::super::numbers::{counted, fixed};
 use super::{Checked, Page};
 use crate::baseline::SeasonYears;
@@ -25,6 +26,7 @@ impl Checked<'_> {
             let years = if first == last { first.to_string() } else { format!("{first} to {last}") };
             page.line("  left out", format!("{years}: {}", why.join("; ")));
         }
+        page.line("baseline years", baseline_years_in_words(self.baseline_years));
         page.line("dates without a line", fixed(counts.absent_days as f64, 0));
         page.line(
             "temperature missing",

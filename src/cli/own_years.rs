@@ -1,0 +1,36 @@
+//! The record's own years under every level of a study, and what they say.
+
+use super::assemble::Ready;
+use super::failure::Failure;
+use crate::ensemble::{RecordRun, RecordYear};
+use crate::findings::{RecordFindings, RecordQuestions};
+use crate::season::Measures;
+
+/// Runs them, and asks them.
+pub(super) fn own_years(
+    ready: &Ready,
+    measures: &Measures,
+) -> Result<(Vec<RecordYear>, Option<RecordFindings>), Failure> {
+    let warming = &ready.scenario.warming;
+    let changes: Vec<_> = warming.levels_c.iter().map(|level| warming.warming.at(*level)).collect();
+    let run = RecordRun {
+        lanes: &ready.lanes(&changes),
+        levels: changes.len(),
+        reference: warming.reference,
+        bands: ready.basin.bands.len(),
+        measures,
+    };
+    let years = run.years(&ready.weather).map_err(|open| Failure::Ours(open.to_string()))?;
+    let findings = RecordFindings::of(&RecordQuestions {
+        years: &years,
+        left_out: &ready.record.skipped,
+        weather: &ready.weather,
+        baseline: &ready.baseline_years,
+        measures: measures.list(),
+        season: measures.settings(),
+        bands: &ready.basin.bands,
+        levels_c: &warming.levels_c,
+        reference: warming.reference,
+    });
+    Ok((years, findings))
+}
