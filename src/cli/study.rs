@@ -145,7 +145,7 @@ fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Fa
     for figure in &FIGURES {
         if let Some(svg) = (figure.draw)(study.findings, &setting) {
             files.push((format!("figures/{}.svg", figure.slug), svg.text.clone().into_bytes()));
-            drawn.push(svg);
+            drawn.push((figure.part, svg));
         }
     }
     let (slugs, drawn_of_sites): (Vec<_>, Vec<_>) =

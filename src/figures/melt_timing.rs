@@ -9,14 +9,18 @@ use super::marks::Form;
 use super::page::Paragraphs;
 use super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
 use super::theme::{EDGE, LABEL, MARGIN_PX, NOTE, WIDTH_PX};
-use super::{Figure, Setting, Svg};
+use super::{Figure, Part, Setting, Svg};
 use crate::findings::{Findings, MeasureFindings};
 use panel::{Area, Panel};
 use words::Words;
 
 /// The figure.
-pub(super) const FIGURE: Figure =
-    Figure { slug: "melt-timing", question: "How much earlier does the snow melt as the basin warms?", draw };
+pub(super) const FIGURE: Figure = Figure {
+    slug: "melt-timing",
+    question: "How much earlier does the snow melt as the basin warms?",
+    part: Part::Timing,
+    draw,
+};
 
 /// Least span of the calendar, days.
 const LEAST_DAYS: f64 = 40.0;

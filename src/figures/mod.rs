@@ -39,8 +39,25 @@ pub struct Figure {
     pub slug: &'static str,
     /// The question that it answers.
     pub question: &'static str,
+    /// Which part of the page it belongs to.
+    pub part: Part,
     /// Draws it; nothing where the findings have not what it shows.
     pub draw: fn(&Findings, &Setting<'_>) -> Option<Svg>,
+}
+
+/// The parts of a page that have figures.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Part {
+    /// Does warming outweigh precipitation?
+    Answer,
+    /// When does the snow lie, and go?
+    Timing,
+    /// Where is it lost?
+    Elevation,
+    /// How much water is it?
+    Volumes,
+    /// What is it drawn from?
+    Record,
 }
 
 /// Every figure, in the order in which a reader meets them.

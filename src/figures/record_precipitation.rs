@@ -9,7 +9,7 @@ use super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
 use super::theme::{
     BAND, DRY, EDGE, INK, LABEL, Lettering, MARGIN_PX, NAME, NOTE, ONE_OF_MANY, WET, WIDTH_PX,
 };
-use super::{Figure, Setting, Svg};
+use super::{Figure, Part, Setting, Svg};
 use crate::findings::{Findings, RecordPrecipitation, YearPrecipitation};
 use crate::units::Unit;
 use words::Words;
@@ -18,6 +18,7 @@ use words::Words;
 pub(super) const FIGURE: Figure = Figure {
     slug: "record-precipitation",
     question: "How far apart were the driest and the wettest winter of the record?",
+    part: Part::Record,
     draw,
 };
 

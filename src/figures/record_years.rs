@@ -7,7 +7,7 @@ use super::axes::AmountTicks;
 use super::page::Paragraphs;
 use super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
 use super::theme::{BAND, EDGE, INK, LABEL, MARGIN_PX, MODELLED, NAME, NOTE, PAPER, WIDTH_PX};
-use super::{Figure, Setting, Svg};
+use super::{Figure, Part, Setting, Svg};
 use crate::findings::{Findings, OwnYear, RecordFindings};
 use crate::units::Unit;
 use rows::{ROW_PX, Row};
@@ -18,6 +18,7 @@ use words::Words;
 pub(super) const FIGURE: Figure = Figure {
     slug: "record-years",
     question: "Which years does the study stand on, and which were left out?",
+    part: Part::Record,
     draw,
 };
 

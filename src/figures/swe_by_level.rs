@@ -9,7 +9,7 @@ use super::marks::{DotSize, Form, Marking, dots, point_interval};
 use super::page::Paragraphs;
 use super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
 use super::theme::{BAND, EDGE, INK, LABEL, MARGIN_PX, NAME, NOTE, WIDTH_PX, level_ink};
-use super::{Figure, Setting, Svg};
+use super::{Figure, Part, Setting, Svg};
 use crate::findings::{DOTS, Distribution, Findings, LevelFindings, MeasureFindings, Spread};
 use crate::units::{Unit, UnitSystem};
 use columns::{BESIDE_POINT_PX, Columns};
@@ -19,6 +19,7 @@ use words::Words;
 pub(super) const FIGURE: Figure = Figure {
     slug: "swe-by-level",
     question: "How much snow water is left as the basin warms, and does precipitation's chance hide the loss?",
+    part: Part::Answer,
     draw,
 };
 

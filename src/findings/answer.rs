@@ -132,6 +132,12 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
     })
 }
 
+impl Questions<'_> {
+    fn area_km2(&self) -> f64 {
+        self.bands.iter().map(|band| band.area_km2).sum()
+    }
+}
+
 impl Runs<'_> {
     fn of_basin(&self, at: usize, questions: &Questions<'_>) -> Asked<'_> {
         let basin = &self.study.basin;
@@ -147,7 +153,7 @@ impl Runs<'_> {
             held: self
                 .temperature_held
                 .map(|held| held.basin.periods.index_axis(Axis(0), 0).index_axis_move(Axis(0), at)),
-            years: Some((years, questions.bands.iter().map(|band| band.area_km2).sum())),
+            years: Some((years, questions.area_km2())),
         }
     }
 
@@ -184,7 +190,7 @@ impl Runs<'_> {
             let years = other.reference.years.index_axis(Axis(0), 0);
             all.extend(of(years.index_axis_move(Axis(0), at), other.times_assumed));
         }
-        let record_range = RecordRange::of(self.refits, at, questions.levels_c);
+        let record_range = RecordRange::of(self.refits, at, questions.levels_c, questions.area_km2());
         MeasureFindings { yardsticks: all, record_range, ..findings }
     }
 }

@@ -12,6 +12,7 @@ use super::spread::Spread;
 use super::yardstick::Levels;
 use crate::ensemble::BasinSeasons;
 use crate::season::Measure;
+use crate::units::cubic_hectometres;
 use ndarray::Axis;
 use serde::Serialize;
 
@@ -27,6 +28,12 @@ pub struct Range {
     pub q05: f64,
     /// 95 % quantile.
     pub q95: f64,
+}
+
+impl Range {
+    fn map(self, unit: impl Fn(f64) -> f64) -> Self {
+        Self { q05: unit(self.q05), q95: unit(self.q95) }
+    }
 }
 
 /// The record's own uncertainty of what is found of one measure.
@@ -60,6 +67,9 @@ pub struct RecordRangeLevel {
     /// Of the volumes that 90, 70, 50, 30 and 10 % of years bring at least, as depths over the basin, mm.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub exceeded_mm: Vec<Range>,
+    /// The same as volumes, hm3.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub exceeded_hm3: Vec<Range>,
 }
 
 /// What one resampled record answers, `[measure]`.
@@ -135,7 +145,7 @@ impl RefitMeasure {
 
 impl RecordRange {
     /// The ranges of one measure over all resampled records; nothing where there are fewer than two.
-    pub(super) fn of(refits: &[Refit], measure: usize, levels_c: &[f64]) -> Option<Self> {
+    pub(super) fn of(refits: &[Refit], measure: usize, levels_c: &[f64], area_km2: f64) -> Option<Self> {
         let of_each: Vec<&RefitMeasure> = refits.iter().map(|refit| &refit.measures[measure]).collect();
         if of_each.len() < 2 {
             return None;
@@ -145,6 +155,7 @@ impl RecordRange {
                 range(of_each.iter().map(|refit| number(&refit.levels[level])))
             };
             let exceeded = |at: usize| range(&|level| level.exceeded_mm.map(|amounts| amounts[at]));
+            let exceeded_mm: Vec<Range> = (0..EXCEEDANCE_PCT.len()).map_while(exceeded).collect();
             RecordRangeLevel {
                 level_c: *level_c,
                 shift: range(&|level| level.shift),
@@ -152,7 +163,11 @@ impl RecordRange {
                 signal_to_spread: range(&|level| level.signal_to_spread),
                 period_below_reference: range(&|level| level.period_below_reference),
                 reaches_reference_median: range(&|level| level.reaches_reference_median),
-                exceeded_mm: (0..EXCEEDANCE_PCT.len()).map_while(exceeded).collect(),
+                exceeded_hm3: exceeded_mm
+                    .iter()
+                    .map(|range| range.map(|mm| cubic_hectometres(mm, area_km2)))
+                    .collect(),
+                exceeded_mm,
             }
         });
         Some(Self {

@@ -2,16 +2,21 @@
 
 mod answer;
 mod assumed;
+mod elevation;
 mod levels;
 mod normal;
 mod observed;
 mod record;
+mod snow;
+mod sources;
+mod volumes;
+mod yardsticks;
 
 use super::answer::Answer;
 use super::numbers::counted;
 use super::study::Study;
 use super::{cautions, terms};
-use crate::figures::Svg;
+use crate::figures::{Part, Svg};
 use maud::{DOCTYPE, Markup, PreEscaped, html};
 use sha2::{Digest, Sha256};
 
@@ -19,7 +24,13 @@ const STYLE: &str = include_str!("briefing/style.css");
 
 /// The page; `of_sites` are the figures of observed snow. Nothing is fetched and no script runs: its own policy forbids
 /// both.
-pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg], of_sites: &[Svg]) -> Vec<u8> {
+pub fn briefing_html(
+    study: &Study<'_>,
+    answer: &Answer,
+    figures: &[(Part, Svg)],
+    of_sites: &[Svg],
+) -> Vec<u8> {
+    let figures = Figures(figures);
     let findings = study.findings;
     let policy =
         format!("default-src 'none'; style-src 'sha256-{}'", base64(&Sha256::digest(STYLE.as_bytes())));
@@ -53,23 +64,36 @@ pub fn briefing_html(study: &Study<'_>, answer: &Answer, figures: &[Svg], of_sit
                             " " a href=(format!("#{}", assumed::SECOND_LOOK)) { "worth a second look" } "." }
                     }
                     (answer::section(study, answer))
-                    @for figure in figures {
-                        (self::figure(figure))
-                    }
-                    (levels::section(study))
-                    (record::section(study))
+                    (figures.of(Part::Answer))
+                    (snow::section(study))
+                    (snow::timing(study, &figures))
+                    (elevation::section(study, &figures))
+                    (volumes::section(study, &figures))
+                    (yardsticks::section(study, answer))
+                    (record::section(study, &figures))
                     (normal::section(study))
                     (observed::section(study, of_sites))
                     (assumed::section(study))
                     (list_section("Cautions", &cautions::cautions(study.reader)))
                     h2 { "Terms" }
                     dl { @for (term, meaning) in terms::terms(study.reader) { dt { (term) } dd { (meaning) } } }
+                    (sources::section())
                     (repeat_section(study))
                 }
             }
         }
     };
     page.into_string().into_bytes()
+}
+
+/// The figures of the page, by the part that they belong to.
+struct Figures<'a>(&'a [(Part, Svg)]);
+
+impl Figures<'_> {
+    /// The figures of a part, in their order.
+    fn of(&self, part: Part) -> Markup {
+        html! { @for (_, svg) in self.0.iter().filter(|(of, _)| *of == part) { (figure(svg)) } }
+    }
 }
 
 /// A figure, and how to read it.

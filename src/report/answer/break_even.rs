@@ -36,6 +36,18 @@ pub(super) fn break_even(findings: &Findings, headline: &MeasureFindings, reader
     words
 }
 
+/// The sentence of one level.
+pub(super) fn at(
+    findings: &Findings,
+    headline: &MeasureFindings,
+    at: usize,
+    reader: Reader,
+) -> Option<String> {
+    let found = findings.break_even.as_ref().filter(|found| found.reference_median >= LEAST_REFERENCE_MM)?;
+    let at = found.levels.iter().find(|level| level.level_c == findings.levels_c[at])?;
+    Some(of_level(found, at, &period_name(findings, headline), reader))
+}
+
 fn of_level(found: &BreakEven, at: &BreakEvenLevel, name: &str, reader: Reader) -> String {
     let level = reader.level(at.level_c);
     let Some(pct) = at.precipitation_change_pct else {

@@ -9,7 +9,7 @@ mod volumes;
 mod yardstick;
 
 pub use chance::{chance_in_table, towards_shift};
-pub use yardstick::from_where_on;
+pub(super) use yardstick::from_where_on;
 
 use super::reader::Reader;
 use crate::findings::{Findings, LevelFindings, MeasureFindings};
@@ -19,6 +19,8 @@ use crate::findings::{Findings, LevelFindings, MeasureFindings};
 pub struct Answer {
     /// One sentence: does warming outweigh the precipitation spread, and from where on?
     pub verdict: String,
+    /// The questions that a reader asks next.
+    pub at_a_glance: Vec<Asked>,
     /// How much, level by level.
     pub amounts: Vec<String>,
     /// What the verdict measures with, and whether another measure would change it.
@@ -37,6 +39,15 @@ pub struct Answer {
     pub chances: Vec<String>,
 }
 
+/// A question and what is answered to it.
+#[derive(Debug, Clone, PartialEq, serde::Serialize)]
+pub struct Asked {
+    /// The question.
+    pub question: &'static str,
+    /// One sentence or more.
+    pub answer: Vec<String>,
+}
+
 /// Puts the findings into a reader's words.
 pub fn answer_in_words(findings: &Findings, reader: Reader) -> Answer {
     let Some(headline) = findings.basin.first() else {
@@ -44,7 +55,8 @@ pub fn answer_in_words(findings: &Findings, reader: Reader) -> Answer {
     };
     let levels = || headline.levels.iter();
     let changed = |level: &&LevelFindings| level.shift.is_some();
-    Answer {
+    let mut answer = Answer {
+        at_a_glance: Vec::new(),
         verdict: verdict::verdict(findings, headline, reader),
         amounts: levels()
             .filter(changed)
@@ -57,7 +69,38 @@ pub fn answer_in_words(findings: &Findings, reader: Reader) -> Answer {
         volumes: volumes::volumes(findings, reader),
         break_even: break_even::break_even(findings, headline, reader),
         chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
-    }
+    };
+    answer.at_a_glance = at_a_glance(findings, headline, &answer, reader);
+    answer
+}
+
+/// The questions that have an answer, told for one level where one must do.
+fn at_a_glance(
+    findings: &Findings,
+    headline: &MeasureFindings,
+    answer: &Answer,
+    reader: Reader,
+) -> Vec<Asked> {
+    let at = telling_level(findings);
+    let told = |at: usize| {
+        let level = &headline.levels[at];
+        level.shift.is_some().then(|| verdict::how_much(findings, headline, level, reader))
+    };
+    let how_much = at.and_then(told).into_iter().chain(at.and_then(|at| place::timing(findings, at, reader)));
+    let yardsticks =
+        [answer.yardstick.first(), answer.yardstick.last().filter(|_| answer.yardstick.len() > 1)];
+    let asked = [
+        ("How much?", how_much.chain(answer.elevation.clone()).collect()),
+        ("Against which yardstick?", yardsticks.into_iter().flatten().cloned().collect()),
+        ("How sure is it?", answer.how_sure.clone()),
+        ("How much water is that?", answer.volumes.iter().cloned().collect()),
+        (
+            "What would make up for it?",
+            at.and_then(|at| break_even::at(findings, headline, at, reader)).into_iter().collect::<Vec<_>>(),
+        ),
+    ];
+    let asked = asked.into_iter().filter(|(_, answer)| !answer.is_empty());
+    asked.map(|(question, answer)| Asked { question, answer }).collect()
 }
 
 /// `30-year mean 1 April SWE` or, of a date, `30-year median melt-out`.

@@ -82,7 +82,7 @@ fn of_assumption(of: &Yardstick) -> &'static str {
 }
 
 /// `from +1.4 °C on`, `from +1.2 °C to +3.0 °C`, `at no level up to +4 °C`: goes on from 'outweighs'.
-pub fn from_where_on(crossing: Crossing, reader: Reader) -> String {
+pub(in crate::report) fn from_where_on(crossing: Crossing, reader: Reader) -> String {
     match crossing {
         Crossing::At { level_c, until_c: None } => format!("from {} on", reader.between_levels(level_c)),
         Crossing::At { level_c, until_c: Some(until_c) } => {

@@ -1,4 +1,4 @@
-//! The answer: the verdict, a line a level, and what it is measured with.
+//! The answer: the verdict, the questions that a reader asks next, and a line a level.
 
 use super::super::answer::{Answer, chance_in_table, towards_shift};
 use super::super::numbers::{DASH, days_moved, fixed, signed};
@@ -12,10 +12,11 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
     html! {
         h2 { "Answer" }
         p.verdict { (answer.verdict) }
-        ul { @for sentence in answer.amounts.iter().chain(&answer.elevation) { li { (sentence) } } }
+        dl { @for asked in &answer.at_a_glance {
+            dt { (asked.question) }
+            dd { @for sentence in &asked.answer { p { (sentence) } } }
+        } }
         @if let Some(headline) = study.findings.basin.first() { (by_level(study.findings, headline, study.reader)) }
-        h3 { "How it is measured" }
-        @for sentence in &answer.yardstick { p { (sentence) } }
     }
 }
 
@@ -60,7 +61,8 @@ fn by_level(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> 
     }
 }
 
-fn ratio(ratio: Estimate) -> String {
+/// `1.48 ± 0.09`.
+pub(super) fn ratio(ratio: Estimate) -> String {
     let error = ratio.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
     format!("{}{error}", fixed(ratio.value, 2))
 }

@@ -1,69 +1,47 @@
-//! Tables level by level: the basin's measures, and the headline by elevation.
+//! Tables level by level: some measures of the basin, a row each.
 
-use super::super::answer::period_name;
 use super::super::numbers::{DASH, fixed, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
-use crate::findings::{LevelFindings, MeasureFindings};
-use crate::season::{Kind, LEAST_REFERENCE_MM, Outcome};
+use crate::findings::{Findings, LevelFindings, MeasureFindings};
+use crate::season::Outcome;
 use maud::{Markup, html};
 
-/// The section.
-pub(super) fn section(study: &Study<'_>) -> Markup {
-    let (findings, reader) = (study.findings, study.reader);
+/// `reference`, `+1 °C`, ...: the columns of a table by level.
+pub(super) fn names(findings: &Findings, reader: Reader) -> Vec<String> {
     let levels = findings.levels_c.iter().enumerate();
-    let names: Vec<String> = levels
+    levels
         .map(
             |(at, level_c)| {
                 if at == findings.reference { "reference".to_owned() } else { reader.level(*level_c) }
             },
         )
-        .collect();
+        .collect()
+}
+
+/// A row for each of the basin's measures that are asked for.
+pub(super) fn table(study: &Study<'_>, is_asked: impl Fn(&MeasureFindings) -> bool) -> Markup {
+    let (findings, reader) = (study.findings, study.reader);
     html! {
-        h2 { "Level by level" }
-        div.scroll {
-            table {
-                caption { "Basin mean, median over " (findings.realizations) " realizations of " (findings.years)
-                    "-year values; below it the median paired change from the reference, and how many times its half spread that is." }
-                thead { tr {
-                    th scope="col" { "Measure" }
-                    @for name in &names { th scope="col" { (name) } }
-                } }
-                tbody { @for measure in &findings.basin { tr {
-                    th scope="row" { (measure.measure.title) }
-                    @for at in &measure.levels { td { (level_cell(reader, measure, at)) } }
-                } } }
+        div.scroll { table {
+            caption {
+                "Basin mean, median over " (findings.realizations) " realizations of " (findings.years)
+                "-year values; below it the median paired change from the reference ± its Monte Carlo error, and how many times its \
+                 half spread that is."
             }
-        }
-        @if let Some(headline) = findings.basin.first() {
-            h3 { "By elevation: " (period_name(findings, headline)) }
-            div.scroll {
-                table {
-                    caption {
-                        "Median over realizations; in brackets the change from the reference, where its median is "
-                        (reader.limit(LEAST_REFERENCE_MM)) " or more."
-                    }
-                    thead { tr {
-                        th scope="col" { "Band, " (reader.units.elevation().word) }
-                        th scope="col" { "Area, " (reader.units.area().word) }
-                        @for name in &names { th scope="col" { (name) } }
-                    } }
-                    tbody { @for band in findings.bands.iter().rev() { @if let Some(measure) = band.measures.first() { tr {
-                        th scope="row" { (reader.elevation_bare(band.band.lower_m)) " – " (reader.elevation_bare(band.band.upper_m)) }
-                        td { (reader.area_bare(band.band.area_km2)) }
-                        @for at in &measure.levels { td {
-                            (reader.outcome(at.periods.q50, Kind::AmountMm))
-                            @if let Some(percent) = at.percent_change { " (" (signed(percent, 0)) " %)" }
-                        } }
-                    } } } }
-                }
-            }
-        }
-        p { "All of it, with ranges and Monte Carlo errors, stands in " code { "tables/" } " and " code { "summary.json" } "." }
+            thead { tr {
+                th scope="col" { "Measure" }
+                @for name in names(findings, reader) { th scope="col" { (name) } }
+            } }
+            tbody { @for measure in findings.basin.iter().filter(|measure| is_asked(measure)) { tr {
+                th scope="row" { (measure.measure.title) }
+                @for at in &measure.levels { td { (cell(reader, measure, at)) } }
+            } } }
+        } }
     }
 }
 
-fn level_cell(reader: Reader, measure: &MeasureFindings, at: &LevelFindings) -> Markup {
+fn cell(reader: Reader, measure: &MeasureFindings, at: &LevelFindings) -> Markup {
     let kind = measure.measure.kind;
     let undefined = [
         (at.periods.none, Outcome::None),
@@ -79,7 +57,7 @@ fn level_cell(reader: Reader, measure: &MeasureFindings, at: &LevelFindings) -> 
         (reader.outcome(at.periods.q50, kind))
         @if let Some(shift) = at.shift {
             br;
-            (reader.change_of(kind, shift.median.value))
+            (reader.change_of(kind, shift.median.value, shift.median.monte_carlo_error))
             @if let Some(percent) = at.percent_change { ", " (signed(percent, 0)) " %" }
             br;
             @match at.signal_to_spread { Some(ratio) => { (fixed(ratio.value, 2)) " ×" } None => { (DASH) } }

@@ -3,16 +3,19 @@
 use super::super::numbers::fixed;
 use super::super::study::Study;
 use super::super::trends::{detrended_in_words, trends_in_words, years_stand_for};
+use super::Figures;
+use crate::figures::Part;
 use crate::weather::in_groups;
 use maud::{Markup, html};
 
 /// The section.
-pub(super) fn section(study: &Study<'_>) -> Markup {
+pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     let (record, reader) = (&study.record, study.reader);
     let counts = record.counts;
     let headline = record.measures.first();
     html! {
         h2 { "The record" }
+        (figures.of(Part::Record))
         p {
             (counts.first) " to " (counts.last) ", " (fixed(counts.days as f64, 0)) " days: " (record.years.len()) " water years in use, "
             (record.skipped.len()) " left out. Mean yearly precipitation at the station, after the catch correction, "

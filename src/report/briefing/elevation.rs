@@ -1,0 +1,37 @@
+//! Where: the headline measure by elevation band.
+
+use super::super::answer::period_name;
+use super::super::numbers::signed;
+use super::super::study::Study;
+use super::{Figures, levels};
+use crate::figures::Part;
+use crate::season::{Kind, LEAST_REFERENCE_MM};
+use maud::{Markup, html};
+
+/// The section; nothing where nothing was measured.
+pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
+    let (findings, reader) = (study.findings, study.reader);
+    html! { @if let Some(headline) = findings.basin.first() {
+        h2 { "Where it is lost" }
+        (figures.of(Part::Elevation))
+        div.scroll { table {
+            caption {
+                "By elevation: " (period_name(findings, headline)) ", median over realizations; in brackets the change from the reference, \
+                 where its median is " (reader.limit(LEAST_REFERENCE_MM)) " or more."
+            }
+            thead { tr {
+                th scope="col" { "Band, " (reader.units.elevation().word) }
+                th scope="col" { "Area, " (reader.units.area().word) }
+                @for name in levels::names(findings, reader) { th scope="col" { (name) } }
+            } }
+            tbody { @for band in findings.bands.iter().rev() { @if let Some(measure) = band.measures.first() { tr {
+                th scope="row" { (reader.elevation_bare(band.band.lower_m)) " – " (reader.elevation_bare(band.band.upper_m)) }
+                td { (reader.area_bare(band.band.area_km2)) }
+                @for at in &measure.levels { td {
+                    (reader.outcome(at.periods.q50, Kind::AmountMm))
+                    @if let Some(percent) = at.percent_change { " (" (signed(percent, 0)) " %)" }
+                } }
+            } } } }
+        } }
+    } }
+}

@@ -1,0 +1,24 @@
+//! How much snow: amounts, shares and counts by level; and when it lies and goes.
+
+use super::super::study::Study;
+use super::{Figures, levels};
+use crate::figures::Part;
+use maud::{Markup, html};
+
+/// Amounts, shares and counts.
+pub(super) fn section(study: &Study<'_>) -> Markup {
+    html! {
+        h2 { "Snow, level by level" }
+        (levels::table(study, |of| !of.measure.kind.is_date() && !of.measure.is_volume))
+        p { "All of it, band by band, with ranges and Monte Carlo errors, stands in " code { "tables/" } " and " code { "summary.json" } "." }
+    }
+}
+
+/// Dates.
+pub(super) fn timing(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
+    html! {
+        h2 { "When it lies, and when it goes" }
+        (figures.of(Part::Timing))
+        (levels::table(study, |of| of.measure.kind.is_date()))
+    }
+}

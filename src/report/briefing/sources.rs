@@ -1,0 +1,29 @@
+//! The published methods that the numbers come from.
+
+use maud::{Markup, html};
+
+/// What was used, and who published it.
+const SOURCES: [(&str, &str); 14] = [
+    ("Degree-days of a day's sine between minimum and maximum", "Baskerville & Emin 1969"),
+    ("Rain and snow by a smooth curve, where chosen", "Dai 2008, Geophysical Research Letters 35 L12802"),
+    ("Years resampled in runs (stationary bootstrap)", "Politis & Romano 1994"),
+    ("Quantiles, type 8", "Hyndman & Fan 1996, The American Statistician 50:361"),
+    ("Monte Carlo error by resampling, and by the infinitesimal jackknife", "Efron & Tibshirani 1993"),
+    ("Outflow centroid", "Stewart, Cayan & Dettinger 2005"),
+    ("SWE area, the storage-time integral", "Aragon & Hill 2024, Hydrology and Earth System Sciences 28:781"),
+    ("Seasonal snow cover of 60 days", "Hatchett 2021, Hydrology 8:32"),
+    ("Mann-Kendall test with lag-1 correction", "Hamed & Rao 1998"),
+    ("Slope of a trend", "Theil 1950; Sen 1968"),
+    ("Step in a series", "Pettitt 1979"),
+    ("Interval of a proportion", "Wilson 1927"),
+    ("Nash-Sutcliffe efficiency", "Nash & Sutcliffe 1970"),
+    ("Kling-Gupta efficiency", "Gupta, Kling, Yilmaz & Martinez 2009"),
+];
+
+/// The section.
+pub(super) fn section() -> Markup {
+    html! {
+        h2 { "Sources of the methods" }
+        dl { @for (what, who) in SOURCES { dt { (what) } dd { (who) } } }
+    }
+}
