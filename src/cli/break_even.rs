@@ -2,7 +2,7 @@
 
 use super::assemble::Ready;
 use crate::baseline::Seasons as SeasonsOf;
-use crate::ensemble::{Halt, Plan, Watch, run_records};
+use crate::ensemble::{BasinSeasons, Halt, Plan, Watch, run_records};
 use crate::findings::{BreakEven, BreakEvenLevel, Reached, break_even_pct, quantile, sorted};
 use crate::perturb::{Generator, MonthlyChange, YearBlocks};
 use crate::weather::Series;
@@ -31,7 +31,8 @@ pub(super) fn break_even(
         // The reference stays: it is what is to be regained, and decides about perennial snow.
         scaled[plan.reference] = changes[plan.reference].clone();
         let lanes = ready.lanes(&scaled);
-        let seasons = run_records(&Plan { lanes: &lanes, ..plan }, &[&unchanged], watch)?;
+        let plan = Plan { lanes: &lanes, ..plan };
+        let seasons: Vec<BasinSeasons> = run_records(&plan, &[&unchanged], watch)?.collect();
         let of = |level: usize| {
             let periods = seasons[0].periods.index_axis(ndarray::Axis(0), level);
             quantile(&sorted(periods.row(0).iter().copied()), 0.5)

@@ -4,7 +4,7 @@ use super::assemble::Ready;
 use super::break_even::break_even;
 use super::failure::Failure;
 use super::progress::Progress;
-use crate::ensemble::{Halt, Plan, SweBins, Watch, run, run_records};
+use crate::ensemble::{BasinSeasons, Halt, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
     Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit, Runs,
     TIMES_ASSUMED, answer,
@@ -55,8 +55,9 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     for times_assumed in times_assumed.iter().copied() {
         let mean_change_sd_pct = mean_change_sd_pct * times_assumed;
         let generator = YearBlocks { mean_change_sd_pct, ..generator };
-        let reference = run_records(&of_reference, &[&generator], progress).map_err(halted)?;
-        other_changes.extend(reference.into_iter().map(|reference| OtherChange { times_assumed, reference }));
+        let only: [&dyn Generator; 1] = [&generator];
+        let reference = run_records(&of_reference, &only, progress).map_err(halted)?;
+        other_changes.extend(reference.map(|reference| OtherChange { times_assumed, reference }));
     }
     let records: Vec<Series> = (0..RESAMPLED_RECORDS).map(|at| generator.resampled_record(at)).collect();
     let generators: Vec<YearBlocks<'_>> =
@@ -64,8 +65,8 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let generators: Vec<&dyn Generator> = generators.iter().map(|of_record| of_record as _).collect();
     let of_records = Plan { realizations: of_a_record, ..plan };
     let of_records = run_records(&of_records, &generators, progress).map_err(halted)?;
-    let refit = |seasons| Refit::of(seasons, &warming.levels_c, warming.reference);
-    let refits: Vec<Refit> = of_records.iter().map(refit).collect();
+    let refit = |seasons: BasinSeasons| Refit::of(&seasons, &warming.levels_c, warming.reference);
+    let refits: Vec<Refit> = of_records.map(refit).collect();
 
     let break_even = break_even(ready, &plan, &changes, generator, &Quiet(progress)).map_err(halted)?;
 

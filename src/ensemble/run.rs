@@ -22,7 +22,8 @@ pub fn run(plan: &Plan<'_>, bins: SweBins, watch: &dyn Watch) -> Result<Seasons,
     Ok(Seasons::gather(plan, kept, tally.finish()))
 }
 
-/// The basin means of the plan's realizations from each of several generators instead of its own: the same bits as
+/// The basin means of the plan's realizations from each of several generators instead of its own, put together one
+/// generator at a time as they are asked for: the same bits as
 /// [`run`] keeps of them, with less work. All years of one name in one realization, whichever generator made it, must have
 /// the same weather, as those of one record resampled have: what has been run is not run again. Where all generators
 /// say that years repeat, that holds for all realizations together.
@@ -33,13 +34,13 @@ pub fn run_records(
     plan: &Plan<'_>,
     generators: &[&dyn Generator],
     watch: &dyn Watch,
-) -> Result<Vec<BasinSeasons>, Halt> {
+) -> Result<impl Iterator<Item = BasinSeasons>, Halt> {
     let kept = each(plan, watch, |workshop, number| workshop.run_records(number, generators, watch))?;
-    let of = |at: usize| {
+    let of = move |at: usize| {
         let realizations: Vec<&[f64]> = kept.iter().map(|kept| kept[at].0.as_slice()).collect();
         BasinSeasons::gather(plan, realizations.into_iter())
     };
-    Ok((0..generators.len()).map(of).collect())
+    Ok((0..generators.len()).map(of))
 }
 
 fn each<'p, T: Send>(

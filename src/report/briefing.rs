@@ -65,7 +65,7 @@ pub fn briefing_html(
                     }
                     (answer::section(study, answer))
                     (figures.of(Part::Answer))
-                    (snow::section(study))
+                    (snow::section(study, answer))
                     (snow::timing(study, &figures))
                     (elevation::section(study, &figures))
                     (volumes::section(study, &figures))

@@ -5,6 +5,7 @@ mod briefing;
 mod cautions;
 mod checked;
 mod daily;
+mod json;
 mod normal;
 pub mod numbers;
 mod observed;

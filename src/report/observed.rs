@@ -7,7 +7,7 @@ pub use tables::observed_tables;
 pub use words::comparison_words;
 
 use super::SCHEMA_VERSION;
-use super::summary::lines;
+use super::json::lines;
 use crate::fit::Comparison;
 use serde::Serialize;
 

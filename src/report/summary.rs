@@ -2,6 +2,7 @@
 
 use super::SCHEMA_VERSION;
 use super::answer::Answer;
+use super::json::lines;
 use super::study::{Input, Origin, Study};
 use crate::baseline::{Baseline, BaselineYears, Detrended};
 use crate::basin::BeyondStations;
@@ -249,11 +250,4 @@ pub fn daily_manifest_json(origin: &Origin, files: &[&str]) -> serde_json::Resul
         inputs: &origin.inputs,
         files,
     })
-}
-
-/// A document as it is written: indented, with a line end.
-pub(super) fn lines(document: &impl Serialize) -> serde_json::Result<Vec<u8>> {
-    let mut text = serde_json::to_vec_pretty(document)?;
-    text.push(b'\n');
-    Ok(text)
 }

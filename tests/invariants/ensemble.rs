@@ -106,9 +106,10 @@ proptest! {
         let records: Vec<Series> = (0..3).map(|number| own.resampled_record(number)).collect();
         let generators: Vec<YearBlocks<'_>> = records.iter().map(|record| study.generator(record)).collect();
         let each: Vec<&dyn Generator> = generators.iter().map(|generator| generator as _).collect();
-        let found = run_records(&study.plan(&own, 5, Path::Widest), &each, &Silent).expect("a closed ledger");
-        for (generator, found) in each.into_iter().zip(found) {
-            let alone: BasinSeasons = study.run_from(generator, 2, 5, Path::Widest).basin;
+        let plan = study.plan(&own, 5, Path::Widest);
+        let found = run_records(&plan, &each, &Silent).expect("a closed ledger");
+        for (generator, found) in each.iter().zip(found) {
+            let alone: BasinSeasons = study.run_from(*generator, 2, 5, Path::Widest).basin;
             prop_assert_eq!(bits(&alone.years), bits(&found.years));
             prop_assert_eq!(bits(&alone.periods), bits(&found.periods));
         }

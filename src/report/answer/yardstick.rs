@@ -134,10 +134,6 @@ fn hangs(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> Opt
         .map(|(levels, what)| format!("{what} {}", listed(levels)))
         .collect();
     (!parts.is_empty()).then(|| {
-        format!(
-            "By all of these that are about {}-year values together: {}.",
-            findings.years,
-            parts.join("; ")
-        )
+        format!("By all yardsticks of {}-year values on this page: {}.", findings.years, parts.join("; "))
     })
 }

@@ -26,8 +26,8 @@ pub(super) fn table(study: &Study<'_>, is_asked: impl Fn(&MeasureFindings) -> bo
         div.scroll { table {
             caption {
                 "Basin mean, median over " (findings.realizations) " realizations of " (findings.years)
-                "-year values; below it the median paired change from the reference ± its Monte Carlo error, and how many times its \
-                 half spread that is."
+                "-year values; below it the median paired change from the reference ± its Monte Carlo error, its percentage, and how \
+                 many times the half spread it is."
             }
             thead { tr {
                 th scope="col" { "Measure" }
@@ -58,8 +58,8 @@ fn cell(reader: Reader, measure: &MeasureFindings, at: &LevelFindings) -> Markup
         @if let Some(shift) = at.shift {
             br;
             (reader.change_of(kind, shift.median.value, shift.median.monte_carlo_error))
-            @if let Some(percent) = at.percent_change { ", " (signed(percent, 0)) " %" }
             br;
+            @if let Some(percent) = at.percent_change { (signed(percent, 0)) " %, " }
             @match at.signal_to_spread { Some(ratio) => { (fixed(ratio.value, 2)) " ×" } None => { (DASH) } }
         }
         @if !undefined.is_empty() { br; (undefined.join(", ")) }
