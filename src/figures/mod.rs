@@ -14,10 +14,14 @@ mod page;
 mod reading;
 mod record_precipitation;
 mod record_years;
+mod scales;
 mod sheet;
+mod shown;
 mod swe_by_level;
+mod swe_through_year;
 mod text_width;
 pub mod theme;
+mod thin;
 
 #[cfg(test)]
 mod check;
@@ -61,8 +65,13 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 4] =
-    [swe_by_level::FIGURE, melt_timing::FIGURE, record_years::FIGURE, record_precipitation::FIGURE];
+pub const FIGURES: [Figure; 5] = [
+    swe_by_level::FIGURE,
+    melt_timing::FIGURE,
+    swe_through_year::FIGURE,
+    record_years::FIGURE,
+    record_precipitation::FIGURE,
+];
 
 /// A figure of which there is one a site with observed snow.
 #[derive(Debug, Clone, Copy)]

@@ -2,7 +2,6 @@
 
 mod grid;
 mod panel;
-mod thin;
 mod words;
 
 use super::axes::AmountTicks;
