@@ -1,5 +1,6 @@
 //! Tests of whole figures: text inside and apart, numbers that are numbers, titles that turn with the findings.
 
+mod bands;
 mod comparisons;
 mod records;
 mod studies;

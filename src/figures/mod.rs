@@ -3,6 +3,7 @@
 //! A figure is a pure function from [`Findings`] to bytes, and a number that is drawn is a number there. It states its
 //! finding in its title, names what it shows where it stands, and says that spread is chance.
 
+mod apart;
 mod axes;
 mod backend;
 mod headline;
@@ -17,6 +18,7 @@ mod record_years;
 mod scales;
 mod sheet;
 mod shown;
+mod swe_by_band;
 mod swe_by_level;
 mod swe_through_year;
 mod text_width;
@@ -65,10 +67,11 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 5] = [
+pub const FIGURES: [Figure; 6] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
+    swe_by_band::FIGURE,
     record_years::FIGURE,
     record_precipitation::FIGURE,
 ];
