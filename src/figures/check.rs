@@ -5,6 +5,7 @@ mod comparisons;
 mod records;
 mod studies;
 mod through_year;
+mod volumes;
 
 use super::{FIGURES, Setting, text_width};
 use crate::calendar::{MonthDay, WaterYearStart};

@@ -24,6 +24,7 @@ mod swe_through_year;
 mod text_width;
 pub mod theme;
 mod thin;
+mod window_volume;
 
 #[cfg(test)]
 mod check;
@@ -67,11 +68,12 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 6] = [
+pub const FIGURES: [Figure; 7] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
     swe_by_band::FIGURE,
+    window_volume::FIGURE,
     record_years::FIGURE,
     record_precipitation::FIGURE,
 ];

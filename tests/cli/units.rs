@@ -48,7 +48,7 @@ fn header(table: &str) -> Vec<String> {
 fn no_metric_unit_is_left() {
     let basin = Basin::new();
     both(&basin);
-    let figures = ["swe-by-level", "melt-timing", "swe-through-year", "swe-by-band"];
+    let figures = ["swe-by-level", "melt-timing", "swe-through-year", "swe-by-band", "window-volume"];
     let figures = figures.map(|slug| format!("figures/{slug}.svg"));
     for name in figures.iter().map(String::as_str).chain(["briefing.html"]) {
         let [metric, us] =
