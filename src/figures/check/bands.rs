@@ -79,3 +79,26 @@ fn bars_are_as_long_as_areas() {
     assert!((widths[1] / widths[0] - 37.5 / 52.5).abs() < 0.003, "{widths:?}");
     assert!((widths[2] / widths[0] - 22.5 / 52.5).abs() < 0.003, "{widths:?}");
 }
+
+/// The dashed reference has 688 mm, 27.09 in, in the highest band. By the axis' own ticks its marker stands there in both
+/// units; a tenth of a pixel is rounding.
+#[test]
+fn marks_stand_where_the_ticks_say() {
+    for (units, expected) in [(UnitSystem::Metric, 688.0), (UnitSystem::Us, 688.0 / 25.4)] {
+        let svg = draw(&PLAIN, units);
+        let group = |class: &str| {
+            let opening = format!("<g class=\"{class}\">");
+            let groups = svg.text.split(&opening).skip(1);
+            groups.map(|rest| rest.split("</g>").next().unwrap().to_owned()).collect::<Vec<String>>()
+        };
+        let ticks = texts(&group("axis")[0]).into_iter();
+        let mut ticks =
+            ticks.filter_map(|([l, _, r, _], words)| Some(((l + r) / 2.0, words.parse::<f64>().ok()?)));
+        let (first, last) = (ticks.next().unwrap(), ticks.next_back().unwrap());
+        let reference = group("level").pop().unwrap();
+        let marker = reference.split("<circle cx=\"").nth(1).unwrap().split('"').next().unwrap();
+        let share = (marker.parse::<f64>().unwrap() - first.0) / (last.0 - first.0);
+        let found = first.1 + share * (last.1 - first.1);
+        assert!((found - expected).abs() < 0.1 / (last.0 - first.0) * last.1, "{found} for {expected}");
+    }
+}

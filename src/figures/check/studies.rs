@@ -28,6 +28,8 @@ pub struct Study<'a> {
     pub has_window: bool,
     /// Day of the water year on which most snow lies.
     pub peak_day: f64,
+    /// Days from there to no snow, before and after.
+    pub days_to_none: f64,
 }
 
 /// Edges of thirty bands, m.
@@ -53,6 +55,7 @@ pub const PLAIN: Study<'static> = Study {
     highest_gains_mm: 0.0,
     has_window: true,
     peak_day: 180.0,
+    days_to_none: 100.0,
 };
 
 impl Study<'_> {
@@ -145,7 +148,7 @@ impl Study<'_> {
             let highest_mm = middle + change * (level_c - self.levels_c[self.reference]);
             for (day, year) in (0..COUNTED_DAYS).flat_map(|day| (-5..=5).map(move |year| (day, year))) {
                 let apart = (day as f64 - self.peak_day).abs();
-                let of_highest = 1.0 - apart.min(COUNTED_DAYS as f64 - apart) / 100.0;
+                let of_highest = 1.0 - apart.min(COUNTED_DAYS as f64 - apart) / self.days_to_none;
                 let swe_mm = (of_highest * (highest_mm + half * f64::from(year) / 5.0)).max(0.0);
                 counts[[level, day, ((swe_mm / bins.width_mm).round() as usize).min(bins.count - 1)]] += 1;
             }
@@ -203,5 +206,6 @@ pub fn studies() -> Vec<(&'static str, Study<'static>)> {
         ("no window", Study { has_window: false, ..PLAIN }),
         ("snow across the year's end", Study { peak_day: 5.0, ..PLAIN }),
         ("snow late", Study { peak_day: 330.0, ..PLAIN }),
+        ("snow all year", Study { days_to_none: 3000.0, ..PLAIN }),
     ]
 }
