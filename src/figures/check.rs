@@ -1,8 +1,11 @@
 //! Tests of whole figures: text inside and apart, numbers that are numbers, titles that turn with the findings.
 
+mod bands;
 mod comparisons;
 mod records;
 mod studies;
+mod through_year;
+mod volumes;
 
 use super::{FIGURES, Setting, text_width};
 use crate::calendar::{MonthDay, WaterYearStart};
@@ -27,6 +30,7 @@ fn lettered(element: &str) -> Lettered {
     };
     let number = |name: &str| attribute(name).unwrap().parse::<f64>().unwrap();
     let size = number("font-size");
+    assert!(size >= 12.0, "{words:?} has {size} px");
     let width = text_width(&words, size, attribute("font-weight").is_some());
     let left = number("x")
         - match attribute("text-anchor") {
@@ -63,10 +67,13 @@ fn text_lies_inside_and_apart_and_is_large_enough() {
     let long =
         "Alder Fork above Lantern Reservoir, planning study for the water users of the valley, ".repeat(4);
     for (name, study) in studies() {
-        let both = [UnitSystem::Metric, UnitSystem::Us]
-            .map(|units| ["Alder Fork", &long].map(|title| (units, title)));
-        for (units, title) in both.into_iter().flatten() {
-            for svg in study.draw_in(units, title, 10) {
+        for (units, title, month) in [
+            (UnitSystem::Metric, "Alder Fork", 10),
+            (UnitSystem::Metric, &long, 4),
+            (UnitSystem::Us, "Alder Fork", 1),
+            (UnitSystem::Us, &long, 10),
+        ] {
+            for svg in study.draw_in(units, title, month) {
                 assert_texts_apart(name, &svg.text);
             }
         }
@@ -155,12 +162,36 @@ fn each_figure_is_named_for_readers_who_do_not_see_it() {
         let slug = figure.slug;
         assert!(svg.text.contains(&format!("role=\"img\" aria-labelledby=\"{slug}-title {slug}-desc\"")));
         assert!(svg.text.contains(&format!("<title id=\"{slug}-title\">{}</title>", svg.title)));
-        let of_ensemble = !slug.starts_with("record-");
-        for said in ["60 realizations of 30 years", "5–95 %", "not day-to-day variation"] {
-            assert!(!of_ensemble || svg.caption.contains(said), "{slug}: {said}");
+        let of_years = "60 realizations of 30 years";
+        let said: &[&str] = match slug {
+            "record-years" | "record-precipitation" => &[],
+            "swe-through-year" => {
+                &[of_years, "10–90 %", "11 single years a level", "not day-to-day variation"]
+            }
+            "window-volume" => {
+                &[of_years, "90, 70, 50, 30 and 10 %", "60 single years a level", "not streamflow"]
+            }
+            _ => &[of_years, "5–95 %", "at each warming level", "not day-to-day variation"],
+        };
+        for said in said {
+            assert!(svg.caption.contains(said), "{slug}: {said}");
         }
         assert!(svg.alt.starts_with(&svg.title));
+        assert!(!format!("{svg:?}").to_lowercase().contains("runoff"), "{slug}");
     }
+}
+
+#[test]
+fn no_two_elements_of_a_page_have_one_id() {
+    let drawn = PLAIN.draw("Alder Fork", 10);
+    let ids = drawn
+        .iter()
+        .flat_map(|svg| svg.text.split(" id=\"").skip(1))
+        .map(|rest| rest.split_once('"').unwrap().0);
+    let mut ids: Vec<&str> = ids.collect();
+    assert_eq!(ids.len(), 2 * FIGURES.len());
+    ids.sort_unstable();
+    assert!(ids.is_sorted_by(|a, b| a < b), "{ids:?}");
 }
 
 #[test]

@@ -101,9 +101,10 @@ fn text_and_lines_stand_out_from_paper_and_band() {
         for level in 0..levels {
             for reference in 0..levels {
                 let ink = level_ink(level, reference, levels);
-                for ground in [theme::PAPER, theme::BAND] {
+                for ground in [theme::PAPER, theme::BAND, theme::tint(ink)] {
                     assert!(contrast(ink, ground) >= 3.0, "{ink:?} on {ground:?}");
                 }
+                assert!(contrast(theme::EDGE, theme::tint(ink)) >= 3.0, "edge on the tint of {ink:?}");
             }
         }
     }

@@ -1,5 +1,6 @@
 //! Numbers as figures write them: rounded to what a reader can use, with their unit and a true minus sign.
 
+use crate::basin::Band;
 use crate::calendar::{MONTHS, WaterYearStart};
 use crate::units::UnitSystem;
 use chrono::{Datelike, NaiveDate, TimeDelta};
@@ -23,6 +24,31 @@ pub(super) fn size(units: UnitSystem, amount_mm: f64) -> String {
 /// `112 mm`: the same with its unit.
 pub(super) fn size_and_unit(units: UnitSystem, amount_mm: f64) -> String {
     format!("{} {}", size(units, amount_mm), units.depth().word)
+}
+
+/// `1 240`, `112`, `4.3`, `0.30`: a volume of water without its unit.
+pub(super) fn volume(units: UnitSystem, volume_hm3: f64) -> String {
+    let volume = units.volume().of(volume_hm3);
+    let decimals = match volume {
+        0.0 => 0,
+        ..0.995 => 2,
+        ..9.95 => 1,
+        _ => 0,
+    };
+    grouped(volume, decimals)
+}
+
+/// `1 800–2 000 m`: an elevation band by its edges.
+pub(super) fn band(units: UnitSystem, band: &Band) -> String {
+    let [lower, upper] = [band.lower_m, band.upper_m].map(|edge_m| elevation(units, edge_m));
+    format!("{lower}–{upper} {}", units.elevation().word)
+}
+
+/// `1 800`, `−20`: an elevation without its unit.
+pub(super) fn elevation(units: UnitSystem, elevation_m: f64) -> String {
+    let elevation = units.elevation().of(elevation_m).round();
+    let sign = if elevation < 0.0 { MINUS } else { "" };
+    format!("{sign}{}", grouped(elevation.abs(), 0))
 }
 
 /// Whether [`size`] writes it as nothing.
@@ -157,6 +183,15 @@ mod tests {
         assert_eq!(written, ["1\u{2009}200.0", "10.0", "1.0", "0.50", "0"]);
         assert_eq!([-127.0, 0.1].map(|change| signed(UnitSystem::Us, change)), ["−5.0", "0"]);
         assert_eq!([-26.6, 2.31, -0.01].map(signed_percent), ["−27 %", "+2.3 %", "0 %"]);
+    }
+
+    #[test]
+    fn volumes_and_bands_are_rounded_to_what_a_reader_can_use() {
+        let written = [1240.4, 112.4, 9.96, 4.34, 0.3, 0.0].map(|hm3| volume(UnitSystem::Metric, hm3));
+        assert_eq!(written, ["1\u{2009}240", "112", "10", "4.3", "0.30", "0"]);
+        let of = |lower_m, upper_m| Band { lower_m, upper_m, area_km2: 1.0, elevation_m: lower_m };
+        assert_eq!(band(UnitSystem::Metric, &of(900.0, 1200.0)), "900–1\u{2009}200 m");
+        assert_eq!(band(UnitSystem::Us, &of(-304.8, 0.0)), "−1\u{2009}000–0 ft");
     }
 
     #[test]

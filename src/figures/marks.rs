@@ -20,6 +20,17 @@ pub(super) enum Form {
     Round,
     /// A square on its corner.
     Diamond,
+    /// A square on its side.
+    Square,
+    /// A triangle, upright.
+    Triangle,
+}
+
+impl Form {
+    /// The form of a level among those that are drawn beside the reference; the reference is round, and hollow.
+    pub fn of_level(place: usize) -> Self {
+        [Self::Round, Self::Diamond, Self::Square, Self::Triangle][place % 4]
+    }
 }
 
 /// How a distribution is marked.
@@ -51,6 +62,14 @@ pub(super) fn marker(sheet: &Sheet, (x, y): Px, marking: Marking) -> Drawn {
         Form::Diamond => {
             let half = half * 1.2;
             sheet.shape(&[(x, y - half), (x + half, y), (x, y + half), (x - half, y)], ink)
+        }
+        Form::Square => {
+            let half = half * 0.9;
+            sheet.block((x - half, y - half), (x + half, y + half), ink)
+        }
+        Form::Triangle => {
+            let half = half * 1.15;
+            sheet.shape(&[(x, y - half), (x + half, y + 0.8 * half), (x - half, y + 0.8 * half)], ink)
         }
     };
     draw(MARKER_PX, marking.ink)?;

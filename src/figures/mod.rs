@@ -3,6 +3,7 @@
 //! A figure is a pure function from [`Findings`] to bytes, and a number that is drawn is a number there. It states its
 //! finding in its title, names what it shows where it stands, and says that spread is chance.
 
+mod apart;
 mod axes;
 mod backend;
 mod headline;
@@ -14,10 +15,16 @@ mod page;
 mod reading;
 mod record_precipitation;
 mod record_years;
+mod scales;
 mod sheet;
+mod shown;
+mod swe_by_band;
 mod swe_by_level;
+mod swe_through_year;
 mod text_width;
 pub mod theme;
+mod thin;
+mod window_volume;
 
 #[cfg(test)]
 mod check;
@@ -61,8 +68,15 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 4] =
-    [swe_by_level::FIGURE, melt_timing::FIGURE, record_years::FIGURE, record_precipitation::FIGURE];
+pub const FIGURES: [Figure; 7] = [
+    swe_by_level::FIGURE,
+    melt_timing::FIGURE,
+    swe_through_year::FIGURE,
+    swe_by_band::FIGURE,
+    window_volume::FIGURE,
+    record_years::FIGURE,
+    record_precipitation::FIGURE,
+];
 
 /// A figure of which there is one a site with observed snow.
 #[derive(Debug, Clone, Copy)]

@@ -2,11 +2,11 @@
 
 mod grid;
 mod panel;
-mod thin;
 mod words;
 
 use super::axes::AmountTicks;
 use super::page::Paragraphs;
+use super::scales;
 use super::sheet::{Drawn, HPos, Sheet, Stroke, VPos};
 use super::theme::{INK, LABEL, MARGIN_PX, MODELLED, NAME, WIDTH_PX};
 use super::{Setting, SiteFigure, Svg};
@@ -53,9 +53,8 @@ fn paint(
     let key = Paragraphs::key(&words.key);
     let depth = setting.units.depth();
     let ticks = AmountTicks::up_to(depth.of(highest(years)), STEPS);
-    let tick_width = ticks.ticks.iter().map(|(_, label)| LABEL.width(label)).fold(0.0, f64::max);
     let names = MARGIN_PX + heading.height() + 20.0;
-    let grid = Grid::new(years.len(), MARGIN_PX + tick_width + 9.0, names + NAMES_PX);
+    let grid = Grid::new(years.len(), MARGIN_PX + scales::width(&ticks) + 9.0, names + NAMES_PX);
     let below = grid.bottom() + 16.0;
     let sheet = Sheet::new(below + key.height() + MARGIN_PX)?;
 

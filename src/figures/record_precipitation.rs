@@ -2,9 +2,11 @@
 
 mod words;
 
+use super::apart::moved_apart;
 use super::axes::{AmountTicks, Calendar};
 use super::melt_timing::calendar_axis;
 use super::page::Paragraphs;
+use super::scales;
 use super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
 use super::theme::{
     BAND, DRY, EDGE, INK, LABEL, Lettering, MARGIN_PX, NAME, NOTE, ONE_OF_MANY, WET, WIDTH_PX,
@@ -26,6 +28,8 @@ const PLOT_PX: f64 = 300.0;
 const STEPS: usize = 6;
 /// Height of the calendar below the plot, px.
 const AXIS_PX: f64 = 40.0;
+/// Least space between two names, px.
+const BETWEEN_NAMES_PX: f64 = 4.0;
 /// A year among all.
 const YEAR: Stroke = Stroke::solid(ONE_OF_MANY, 0.9);
 const MEDIAN: Stroke = Stroke { ink: INK, width_px: 1.8, dash_px: Some([6, 4]) };
@@ -51,11 +55,10 @@ fn paint(precipitation: &RecordPrecipitation, setting: &Setting<'_>, words: &Wor
     let depth = setting.units.depth();
     let highest_mm = precipitation.years.iter().map(YearPrecipitation::total_mm).fold(0.0, f64::max);
     let ticks = AmountTicks::up_to(depth.of(highest_mm), STEPS);
-    let tick_width = ticks.ticks.iter().map(|(_, label)| LABEL.width(label)).fold(0.0, f64::max);
     let named = named(precipitation, words);
     let label_width = named.iter().flat_map(|curve| &curve.lines);
     let label_width = label_width.map(|(text, lettering)| lettering.width(text)).fold(0.0, f64::max);
-    let left = MARGIN_PX + tick_width + 14.0;
+    let left = MARGIN_PX + scales::width(&ticks) + 14.0;
     let right = WIDTH_PX - MARGIN_PX - label_width - 12.0;
     let top = MARGIN_PX + heading.height() + 46.0;
     let bottom = top + PLOT_PX;
@@ -104,23 +107,14 @@ fn names(
     depth: Unit,
     [right, top, bottom]: [f64; 3],
 ) -> Drawn {
-    let height = NOTE.leading() * 2.0 + 4.0;
-    let mut placed: Vec<(f64, &Named<'_>)> = named
+    let mut ends: Vec<(f64, &Named<'_>)> = named
         .iter()
         .filter_map(|curve| curve.sums_mm.last().map(|mm| (plot.at(1.0, depth.of(*mm)).1, curve)))
         .collect();
-    placed.sort_by(|a, b| a.0.total_cmp(&b.0));
-    let mut free_from = top - 10.0;
-    for (middle, _) in &mut placed {
-        *middle = middle.max(free_from + height / 2.0);
-        free_from = *middle + height / 2.0;
-    }
-    let mut free_to = bottom + 6.0;
-    for (middle, _) in placed.iter_mut().rev() {
-        *middle = middle.min(free_to - height / 2.0);
-        free_to = *middle - height / 2.0;
-    }
-    for (middle, curve) in placed {
+    ends.sort_by(|a, b| a.0.total_cmp(&b.0));
+    let wanted: Vec<[f64; 2]> = ends.iter().map(|(end, _)| [*end, 2.0 * NOTE.leading()]).collect();
+    let middles = moved_apart(&wanted, BETWEEN_NAMES_PX, [top - 10.0, bottom + 6.0]);
+    for ((_, curve), middle) in ends.iter().zip(middles) {
         for (line, (text, lettering)) in curve.lines.iter().enumerate() {
             let y = middle + NOTE.leading() * (line as f64 - 0.5);
             sheet.write(text, (right + 10.0, y), *lettering, HPos::Left, VPos::Center)?;

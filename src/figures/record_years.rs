@@ -5,6 +5,7 @@ mod words;
 
 use super::axes::AmountTicks;
 use super::page::Paragraphs;
+use super::scales;
 use super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
 use super::theme::{BAND, EDGE, INK, LABEL, MARGIN_PX, MODELLED, NAME, NOTE, PAPER, WIDTH_PX};
 use super::{Figure, Part, Setting, Svg};
@@ -86,10 +87,9 @@ fn paint(
     let highest_mm =
         record.years.iter().map(|year| year.headline_mm).fold(normal_mm.unwrap_or(0.0), f64::max);
     let ticks = AmountTicks::up_to(depth.of(highest_mm), STEPS);
-    let tick_width = ticks.ticks.iter().map(|(_, label)| LABEL.width(label)).fold(0.0, f64::max);
     let names = rows.iter().map(|row| NOTE.width(&row.name));
     let beside = names.chain(words.normal.iter().map(|line| NAME.width(line))).fold(0.0, f64::max);
-    let left = MARGIN_PX + tick_width + 14.0;
+    let left = MARGIN_PX + scales::width(&ticks) + 14.0;
     let right = WIDTH_PX - MARGIN_PX - beside - BESIDE_PX;
     let top = MARGIN_PX + heading.height() + ABOVE_PX;
     let bottom = top + PLOT_PX;
@@ -111,7 +111,11 @@ fn paint(
             sheet.block((from - half, top), (to + half, rows_bottom), BAND)
         })
     })?;
-    sheet.group("axis", || amounts(&sheet, &scale, &ticks, &words.axis, top))?;
+    sheet.group("axis", || {
+        scales::upwards(&sheet, &scale.plot, &ticks, [left, right])?;
+        scales::amounts_upwards(&sheet, &scale.plot, &ticks, left)?;
+        sheet.write(&words.axis, (MARGIN_PX, top - ABOVE_PX + 22.0), NAME, HPos::Left, VPos::Bottom)
+    })?;
     sheet.group("axis", || years_axis(&sheet, &scale, span, bottom))?;
     sheet.group("baseline-years", || baseline(&sheet, &scale, record, span, words, top))?;
     if let Some(normal_mm) = normal_mm {
@@ -135,19 +139,6 @@ fn lollipop(sheet: &Sheet, scale: &Scale, year: &OwnYear) -> Drawn {
         .line(&[(x, scale.y(0.0)), (x, y)], Stroke::solid(MODELLED, (0.3 * scale.year_px).clamp(1.0, 2.4)))?;
     sheet.dot((x, y), radius, MODELLED)?;
     if year.is_baseline { Ok(()) } else { sheet.dot((x, y), (radius - 1.3).max(0.7), PAPER) }
-}
-
-fn amounts(sheet: &Sheet, scale: &Scale, ticks: &AmountTicks, name: &str, top: f64) -> Drawn {
-    let line = Stroke::solid(EDGE, 1.0);
-    let (left, right) = (scale.left, scale.right);
-    for (amount, label) in &ticks.ticks {
-        let y = scale.plot.at(0.0, *amount).1;
-        sheet.line(&[(left - 5.0, y), (left, y)], line)?;
-        sheet.write(label, (left - 9.0, y), LABEL, HPos::Right, VPos::Center)?;
-    }
-    sheet.line(&[(left, scale.y(0.0)), (left, top)], line)?;
-    sheet.line(&[(left, scale.y(0.0)), (right, scale.y(0.0))], line)?;
-    sheet.write(name, (MARGIN_PX, top - ABOVE_PX + 22.0), NAME, HPos::Left, VPos::Bottom)
 }
 
 /// Names as many round years as there is room for.

@@ -7,8 +7,9 @@ use super::axes::AmountTicks;
 use super::headline;
 use super::marks::{DotSize, Form, Marking, dots, point_interval};
 use super::page::Paragraphs;
+use super::scales;
 use super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
-use super::theme::{BAND, EDGE, INK, LABEL, MARGIN_PX, NAME, NOTE, WIDTH_PX, level_ink};
+use super::theme::{BAND, EDGE, INK, MARGIN_PX, NAME, NOTE, WIDTH_PX, level_ink};
 use super::{Figure, Part, Setting, Svg};
 use crate::findings::{DOTS, Distribution, Findings, LevelFindings, MeasureFindings, Spread};
 use crate::units::{Unit, UnitSystem};
@@ -48,8 +49,7 @@ fn paint(
     let key = Paragraphs::key(&words.key);
     let depth = setting.units.depth();
     let ticks = AmountTicks::up_to(depth.of(highest(measure)), STEPS);
-    let tick_width = ticks.ticks.iter().map(|(_, label)| LABEL.width(label)).fold(0.0, f64::max);
-    let left = MARGIN_PX + tick_width + 14.0;
+    let left = MARGIN_PX + scales::width(&ticks) + 14.0;
     let right = WIDTH_PX - MARGIN_PX - BAND_LABEL_PX;
     let columns = Columns::new(&findings.levels_c, left, right);
     let labels = columns.labels(findings, measure, setting.units);
@@ -64,7 +64,11 @@ fn paint(
     if let Some(spread) = &measure.precipitation_spread {
         sheet.group("reference-band", || band(&sheet, &scale, spread, setting.units, [left, right]))?;
     }
-    sheet.group("axis", || axis(&sheet, &scale.plot, &ticks, &words.axis, [left, right]))?;
+    sheet.group("axis", || {
+        scales::upwards(&sheet, &scale.plot, &ticks, [left, right])?;
+        scales::amounts_upwards(&sheet, &scale.plot, &ticks, left)?;
+        sheet.write(&words.axis, (MARGIN_PX, top - 18.0), NAME, HPos::Left, VPos::Bottom)
+    })?;
     let heights = dot_heights(measure, &scale);
     let room = columns.room();
     let size = DotSize::for_all(&heights, room);
@@ -132,19 +136,6 @@ fn band(sheet: &Sheet, scale: &Scale, spread: &Spread, units: UnitSystem, [left,
         sheet.write(line, place, *lettering, HPos::Left, VPos::Center)?;
     }
     Ok(())
-}
-
-fn axis(sheet: &Sheet, plot: &Plot, ticks: &AmountTicks, name: &str, [left, right]: [f64; 2]) -> Drawn {
-    let line = Stroke::solid(EDGE, 1.0);
-    let (floor, ceiling) = (plot.at(0.0, 0.0).1, plot.at(0.0, ticks.top()).1);
-    sheet.line(&[(left, floor), (right, floor)], line)?;
-    sheet.line(&[(left, floor), (left, ceiling)], line)?;
-    for (amount, label) in &ticks.ticks {
-        let y = plot.at(0.0, *amount).1;
-        sheet.line(&[(left - 5.0, y), (left, y)], line)?;
-        sheet.write(label, (left - 9.0, y), LABEL, HPos::Right, VPos::Center)?;
-    }
-    sheet.write(name, (MARGIN_PX, ceiling - 18.0), NAME, HPos::Left, VPos::Bottom)
 }
 
 /// Heights of the dots of every level; none where there are fewer realizations than dots.

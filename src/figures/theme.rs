@@ -41,6 +41,8 @@ const WARMER: [RGBColor; 4] = [
 ];
 /// Levels colder than the reference, from the nearest.
 const COLDER: [RGBColor; 2] = [RGBColor(0x3d, 0x8f, 0x7c), RGBColor(0x14, 0x52, 0x4a)];
+/// Share of a level's colour in its tint.
+const TINT: f64 = 0.14;
 /// Where a lone level stands on its ramp.
 const LONE: f64 = 0.7;
 
@@ -91,12 +93,20 @@ pub fn level_ink(level: usize, reference: usize, levels: usize) -> RGBColor {
     }
 }
 
+/// A light ground of a level's colour, on which the colour itself still stands out.
+pub fn tint(ink: RGBColor) -> RGBColor {
+    blend(PAPER, ink, TINT)
+}
+
 fn along(ramp: &[RGBColor], place: usize, places: usize) -> RGBColor {
     let share = if places <= 1 { LONE } else { place as f64 / (places - 1) as f64 };
     let position = share * (ramp.len() - 1) as f64;
     let below = (position as usize).min(ramp.len() - 2);
     let part = position - below as f64;
-    let (from, to) = (ramp[below], ramp[below + 1]);
+    blend(ramp[below], ramp[below + 1], part)
+}
+
+fn blend(from: RGBColor, to: RGBColor, part: f64) -> RGBColor {
     let mix = |from: u8, to: u8| (f64::from(from) + part * (f64::from(to) - f64::from(from))).round() as u8;
     RGBColor(mix(from.0, to.0), mix(from.1, to.1), mix(from.2, to.2))
 }

@@ -29,6 +29,10 @@ pub struct LevelThroughYear {
     pub q50_mm: Vec<f64>,
     /// 90 % quantile of each day, mm.
     pub q90_mm: Vec<f64>,
+    /// Highest value of the median, mm.
+    pub highest_median_mm: f64,
+    /// Day of the water year, counted from 1, in the middle of those on which the median has it; none where it is 0.
+    pub highest_median_day: Option<usize>,
 }
 
 impl SweThroughYear {
@@ -39,8 +43,17 @@ impl SweThroughYear {
             let ranked: Vec<[f64; 3]> = (0..COUNTED_DAYS)
                 .map(|day| quantiles(days.day(level, day).iter().copied()).map(|bin| bin * bins.width_mm))
                 .collect();
-            let column = |at: usize| ranked.iter().map(|quantiles| quantiles[at]).collect();
-            LevelThroughYear { level_c: *level_c, q10_mm: column(0), q50_mm: column(1), q90_mm: column(2) }
+            let column = |at: usize| ranked.iter().map(|quantiles| quantiles[at]).collect::<Vec<f64>>();
+            let q50_mm = column(1);
+            let (highest_median_mm, highest_median_day) = highest(&q50_mm);
+            LevelThroughYear {
+                level_c: *level_c,
+                q10_mm: column(0),
+                q50_mm,
+                q90_mm: column(2),
+                highest_median_mm,
+                highest_median_day,
+            }
         });
         let highest = days.counts.index_axis(ndarray::Axis(2), bins.count - 1);
         Self {
@@ -50,6 +63,16 @@ impl SweThroughYear {
             levels: levels.collect(),
         }
     }
+}
+
+/// The highest of a year's daily values and its day. Binned values stay the same for days about their highest, so the day is
+/// the middle one of these.
+fn highest(days_mm: &[f64]) -> (f64, Option<usize>) {
+    let highest_mm = days_mm.iter().copied().fold(0.0, f64::max);
+    let days: Vec<usize> =
+        (1..).zip(days_mm).filter(|(_, mm)| **mm == highest_mm).map(|(day, _)| day).collect();
+    let middle = days.get(days.len().saturating_sub(1) / 2).copied();
+    (highest_mm, middle.filter(|_| highest_mm > 0.0))
 }
 
 /// The 10, 50 and 90 % quantiles of counts by bin, in bins.
@@ -76,5 +99,14 @@ mod tests {
             counts.iter().enumerate().flat_map(|(bin, n)| std::iter::repeat_n(bin as f64, *n as usize));
         let values = sorted(values);
         assert_eq!(quantiles(counts.into_iter()), [0.1, 0.5, 0.9].map(|p| quantile(&values, p)));
+    }
+
+    /// By hand: 8 mm on the 4th to 6th day.
+    #[test]
+    fn the_highest_days_are_told_by_their_middle() {
+        assert_eq!(highest(&[0.0, 2.0, 6.0, 8.0, 8.0, 8.0, 4.0]), (8.0, Some(5)));
+        assert_eq!(highest(&[0.0, 2.0, 8.0, 8.0]), (8.0, Some(3)));
+        assert_eq!(highest(&[0.0, 0.0]), (0.0, None));
+        assert_eq!(highest(&[]), (0.0, None));
     }
 }

@@ -48,8 +48,9 @@ fn header(table: &str) -> Vec<String> {
 fn no_metric_unit_is_left() {
     let basin = Basin::new();
     both(&basin);
-    let names = ["briefing.html", "figures/swe-by-level.svg", "figures/melt-timing.svg"];
-    for name in names {
+    let figures = ["swe-by-level", "melt-timing", "swe-through-year", "swe-by-band", "window-volume"];
+    let figures = figures.map(|slug| format!("figures/{slug}.svg"));
+    for name in figures.iter().map(String::as_str).chain(["briefing.html"]) {
         let [metric, us] =
             ["metric", "us"].map(|folder| metric_words(&basin.read(&format!("{folder}/{name}"))));
         assert!(metric.iter().any(|word| word == "°C"), "{name}: {metric:?}");

@@ -20,7 +20,28 @@ pub struct Study<'a> {
     pub dates: [f64; 3],
     /// Realizations whose snow never went, and with nothing to time, at every level.
     pub undefined: [usize; 2],
+    /// Edges of the bands, m.
+    pub edges_m: &'a [f64],
+    /// What the highest band gains a degree beside what it loses, mm.
+    pub highest_gains_mm: f64,
+    /// Whether volumes are asked for.
+    pub has_window: bool,
+    /// Day of the water year on which most snow lies.
+    pub peak_day: f64,
+    /// Days from there to no snow, before and after.
+    pub days_to_none: f64,
 }
+
+/// Edges of thirty bands, m.
+const THIRTY: [f64; 31] = {
+    let mut edges_m = [0.0; 31];
+    let mut at = 0;
+    while at < edges_m.len() {
+        edges_m[at] = 900.0 + 100.0 * at as f64;
+        at += 1;
+    }
+    edges_m
+};
 
 /// Five levels, falling.
 pub const PLAIN: Study<'static> = Study {
@@ -30,6 +51,11 @@ pub const PLAIN: Study<'static> = Study {
     swe: [430.0, 90.0, -60.0],
     dates: [220.0, 9.0, -6.0],
     undefined: [0, 0],
+    edges_m: &[2000.0, 2300.0, 2600.0, 2900.0],
+    highest_gains_mm: 0.0,
+    has_window: true,
+    peak_day: 180.0,
+    days_to_none: 100.0,
 };
 
 impl Study<'_> {
@@ -41,12 +67,13 @@ impl Study<'_> {
             place: Place::BandsAndBasin,
             is_volume: name.starts_with("outflow"),
         };
-        let measures = vec![
+        let mut measures = vec![
             measure("swe_04_01_mm", "1 April SWE", Kind::AmountMm),
             measure("melt_d50_day", "day with half of the net melt done", Kind::DayOfWaterYear),
             measure("melt_out_day", "melt-out", Kind::DayOfWaterYear),
             measure("outflow_04_01_to_07_31_mm", "snowpack outflow, 1 April to 31 July", Kind::AmountMm),
         ];
+        measures.truncate(if self.has_window { 4 } else { 3 });
         let (levels, count) = (self.levels_c.len(), self.realizations);
         let is_amount = |measure: usize| matches!(measure, 0 | 3);
         let value = |level: usize, measure: usize, realization: usize| {
@@ -65,9 +92,17 @@ impl Study<'_> {
                 _ => value.round() + 25.0,
             }
         };
-        // Three bands with 40, 100 and 160 % of the basin's amounts.
-        let in_band = |band: usize, measure: usize| {
-            if is_amount(measure) { 0.4 + 0.6 * band as f64 } else { 1.0 }
+        // Amounts grow with elevation: in three bands 40, 100 and 160 % of the basin's.
+        let bands_count = self.edges_m.len() - 1;
+        let height = |band: usize| (band as f64 + 0.5) / bands_count as f64;
+        let in_band = |level: usize, band: usize, measure: usize, realization: usize| {
+            let of_basin = value(level, measure, realization);
+            if !is_amount(measure) {
+                return of_basin;
+            }
+            let warming = self.levels_c[level] - self.levels_c[self.reference];
+            let gains_mm = if band + 1 == bands_count { self.highest_gains_mm * warming } else { 0.0 };
+            (0.1 + 1.8 * height(band)) * of_basin + gains_mm
         };
         let measures_count = measures.len();
         let seasons = Seasons {
@@ -78,18 +113,20 @@ impl Study<'_> {
                 periods: Array3::from_shape_fn((levels, measures_count, count), |(l, m, r)| value(l, m, r)),
                 measures,
             },
-            band_periods: Array4::from_shape_fn((levels, 3, measures_count, count), |(l, b, m, r)| {
-                in_band(b, m) * value(l, m, r)
-            }),
-            band_undefined: Array3::from_elem((levels, 3, measures_count), [0, 0]),
+            band_periods: Array4::from_shape_fn(
+                (levels, bands_count, measures_count, count),
+                |(l, b, m, r)| in_band(l, b, m, r),
+            ),
+            band_undefined: Array3::from_elem((levels, bands_count, measures_count), [0, 0]),
             swe_days: self.swe_days(),
         };
-        let bands = [2000.0, 2300.0, 2600.0].map(|lower_m| Band {
-            lower_m,
-            upper_m: lower_m + 300.0,
-            area_km2: (3100.0 - lower_m) / 20.0,
-            elevation_m: lower_m + 150.0,
-        });
+        let bands: Vec<Band> = (0..bands_count)
+            .map(|band| {
+                let (lower_m, upper_m) = (self.edges_m[band], self.edges_m[band + 1]);
+                let elevation_m = (lower_m + upper_m) / 2.0;
+                Band { lower_m, upper_m, area_km2: 60.0 - 45.0 * height(band), elevation_m }
+            })
+            .collect();
         let questions = Questions {
             levels_c: self.levels_c,
             reference: self.reference,
@@ -102,7 +139,7 @@ impl Study<'_> {
         Findings { years: 30, record: Some(record), ..answer(&runs, &questions, &Silent).unwrap() }
     }
 
-    /// SWE that rises for half the year to what the amounts say and falls again, a few years of it.
+    /// SWE that rises to what the amounts say and falls again, a few years of it.
     fn swe_days(&self) -> SweDays {
         let [middle, half, change] = self.swe;
         let bins = SweBins::up_to(middle + half);
@@ -110,7 +147,8 @@ impl Study<'_> {
         for (level, level_c) in self.levels_c.iter().enumerate() {
             let highest_mm = middle + change * (level_c - self.levels_c[self.reference]);
             for (day, year) in (0..COUNTED_DAYS).flat_map(|day| (-5..=5).map(move |year| (day, year))) {
-                let of_highest = 1.0 - (day as f64 - 180.0).abs() / 100.0;
+                let apart = (day as f64 - self.peak_day).abs();
+                let of_highest = 1.0 - apart.min(COUNTED_DAYS as f64 - apart) / self.days_to_none;
                 let swe_mm = (of_highest * (highest_mm + half * f64::from(year) / 5.0)).max(0.0);
                 counts[[level, day, ((swe_mm / bins.width_mm).round() as usize).min(bins.count - 1)]] += 1;
             }
@@ -129,8 +167,8 @@ impl Study<'_> {
             water_year_starts: WaterYearStart(MonthDay::new(month, 1).unwrap()),
         };
         let findings = self.findings();
-        let draw = |figure: &Figure| (figure.draw)(&findings, &setting).unwrap();
-        FIGURES.iter().map(draw).collect()
+        let draw = |figure: &Figure| (figure.draw)(&findings, &setting);
+        FIGURES.iter().filter_map(draw).collect()
     }
 }
 
@@ -158,5 +196,16 @@ pub fn studies() -> Vec<(&'static str, Study<'static>)> {
         ("not gone", Study { undefined: [5, 0], ..PLAIN }),
         ("hardly gone", Study { undefined: [40, 4], ..PLAIN }),
         ("shifted reference", Study { levels_c: &[0.5, 1.0, 1.5, 2.0], ..PLAIN }),
+        ("one band", Study { edges_m: &[1800.0, 3300.0], ..PLAIN }),
+        ("thirty bands", Study { edges_m: &THIRTY, ..PLAIN }),
+        ("uneven bands", Study { edges_m: &[-30.0, 10.0, 1500.0, 1510.0, 1520.0, 1700.0], ..PLAIN }),
+        (
+            "snow only high",
+            Study { edges_m: &THIRTY, highest_gains_mm: 90.0, swe: [9.0, 8.0, -2.0], ..PLAIN },
+        ),
+        ("no window", Study { has_window: false, ..PLAIN }),
+        ("snow across the year's end", Study { peak_day: 5.0, ..PLAIN }),
+        ("snow late", Study { peak_day: 330.0, ..PLAIN }),
+        ("snow all year", Study { days_to_none: 3000.0, ..PLAIN }),
     ]
 }

@@ -3,8 +3,8 @@
 use super::super::axes::AmountTicks;
 use super::super::sheet::{Drawn, HPos, Plot, Px, Sheet, Stroke, VPos};
 use super::super::theme::{BAND, EDGE, INK, LABEL, MODELLED, NAME, NOTE};
+use super::super::thin::{TOLERANCE_PX, thinned};
 use super::grid::Place;
-use super::thin::thinned;
 use super::words::score;
 use crate::calendar::{MONTHS, date_of};
 use crate::fit::ComparedYear;
@@ -18,8 +18,6 @@ pub(super) const MODELLED_PX: f64 = 1.6;
 pub(super) const OBSERVED_PX: f64 = 2.6;
 /// Radius of a survey's dot, px.
 pub(super) const DOT_PX: f64 = 2.8;
-/// A line may be this far from where its days put it, px.
-const TOLERANCE_PX: f64 = 0.15;
 /// Every third month is named but the water year's first.
 const MONTHS_APART: usize = 3;
 

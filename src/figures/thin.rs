@@ -1,6 +1,9 @@
 //! A line through many points with as few as look the same.
 
-use super::super::sheet::Px;
+use super::sheet::Px;
+
+/// A line may be this far from where its days put it, px.
+pub(super) const TOLERANCE_PX: f64 = 0.15;
 
 /// The points of a line without those that lie within `tolerance_px` of the line through the ones that are kept (Douglas &
 /// Peucker 1973). Both ends are kept.
