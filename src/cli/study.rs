@@ -23,6 +23,9 @@ use std::path::{Path, PathBuf};
 /// A study that would keep more single years than this is refused before it starts, bytes.
 const MOST_KEPT_BYTES: f64 = 4e9;
 
+#[cfg(test)]
+mod said;
+
 #[derive(Serialize)]
 struct Done<'a> {
     schema_version: u32,

@@ -8,6 +8,8 @@ pub const DASH: &str = "–";
 
 /// A number with so many decimals (at most three), halves rounded away from zero, a true minus, no minus before zero, and thousands set apart by a thin space.
 pub fn fixed(value: f64, decimals: usize) -> String {
+    #[cfg(test)]
+    said::note(value);
     let scale = [1.0, 10.0, 100.0, 1000.0].get(decimals).copied().unwrap_or(1.0);
     let text = format!("{:.decimals$}", (value.abs() * scale).round() / scale);
     let is_zero = text.bytes().all(|byte| byte == b'0' || byte == b'.');
@@ -30,6 +32,12 @@ pub fn signed(value: f64, decimals: usize) -> String {
     if value > 0.0 && !is_zero { format!("+{text}") } else { text }
 }
 
+/// An error beside a number: one figure or two, `0.04`, `0.9`, `2.7`, `17`.
+pub fn precision(error: f64) -> String {
+    let decimals = [9.5, 0.95, 0.095].iter().filter(|limit| error < **limit).count();
+    if error > 0.0 && error < 0.0005 { "< 0.001".to_owned() } else { fixed(error, decimals) }
+}
+
 /// The number without zeros at the end of its decimals: `3.60` as `3.6`, `2.00` as `2`.
 pub fn trimmed(number: &str) -> &str {
     if number.contains('.') { number.trim_end_matches('0').trim_end_matches('.') } else { number }
@@ -37,6 +45,8 @@ pub fn trimmed(number: &str) -> &str {
 
 /// `14 May`: the date of a day of the water year in a year of 365 days, to the nearest whole day.
 pub fn date(day: f64, starts: WaterYearStart) -> String {
+    #[cfg(test)]
+    said::note(day);
     let date = date_of(starts.first_day(2002), day.round().max(1.0) as usize);
     format!("{} {}", date.day(), MONTHS[date.month0() as usize])
 }
@@ -48,6 +58,8 @@ pub fn counted(count: usize, one: &str) -> String {
 
 /// `12 days earlier`, `1 day later`, `no change to the day`.
 pub fn days_moved(days: f64) -> String {
+    #[cfg(test)]
+    said::note(days);
     let whole = days.abs().round();
     match (whole, days < 0.0) {
         (0.0, _) => "unchanged to the day".to_owned(),
@@ -55,6 +67,25 @@ pub fn days_moved(days: f64) -> String {
         (1.0, false) => "1 day later".to_owned(),
         (_, true) => format!("{whole} days earlier"),
         (_, false) => format!("{whole} days later"),
+    }
+}
+
+/// Every number that was put into words on this thread, before it was rounded: for the test that holds words to the
+/// summary.
+#[cfg(test)]
+pub mod said {
+    use std::cell::RefCell;
+
+    thread_local!(static SAID: RefCell<Vec<f64>> = const { RefCell::new(Vec::new()) });
+
+    /// Notes a number.
+    pub fn note(value: f64) {
+        SAID.with_borrow_mut(|said| said.push(value));
+    }
+
+    /// Takes all that has been said since the last time.
+    pub fn take() -> Vec<f64> {
+        SAID.take()
     }
 }
 
@@ -70,6 +101,10 @@ mod tests {
         assert_eq!(signed(0.0, 0), "0");
         assert_eq!(signed(-6.5, 0), "−7", "as days_moved rounds");
         assert_eq!(["3.60", "+2.00", "10", "0.0"].map(trimmed), ["3.6", "+2", "10", "0"]);
+        assert_eq!(
+            [17.4, 2.71, 0.94, 0.04, 0.0004, 0.0].map(precision),
+            ["17", "2.7", "0.94", "0.040", "< 0.001", "0.000"]
+        );
         assert_eq!(days_moved(-0.6), "1 day earlier");
         let october = WaterYearStart(MonthDay::new(10, 1).unwrap());
         assert_eq!(date(183.0, october), "1 April");

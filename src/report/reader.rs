@@ -1,6 +1,6 @@
 //! Quantities as one reader takes them: in the reader's units, rounded to what they can bear, with the unit's word.
 
-use super::numbers::{date, fixed, signed, trimmed};
+use super::numbers::{date, fixed, precision, signed, trimmed};
 use crate::calendar::WaterYearStart;
 use crate::season::{Kind, Outcome};
 use crate::units::UnitSystem;
@@ -141,33 +141,24 @@ impl Reader {
         }
     }
 
-    /// A change of a measure of that kind, with its error where there is one: `−112 ± 2.7 mm`, `−6.5 percentage points`,
-    /// `+1.2 days`, `−12 ± 0.4 d`.
+    /// A change of a measure of that kind, with its error where there is one: `−112 ± 2.7`, in the unit of the measure's
+    /// value beside which it stands; `−6.5 points`, `+1.2 days`, `−12 ± 0.4 d`.
     pub fn change_of(self, kind: Kind, change: f64, error: Option<f64>) -> String {
-        let depth = self.units.depth();
-        let area = self.units.depth_days();
-        let [change, error] = [Some(change), error].map(|number| {
-            number.map(|number| match kind {
-                Kind::AmountMm => (depth.of(number), self.amount_decimals(number)),
-                Kind::AmountMmDays => (area.of(number), 0),
-                Kind::Share => (100.0 * number, share_decimals(number)),
-                Kind::DayCount => (number, 1),
-                Kind::DayOfWaterYear | Kind::ArrivalDay => (number, 0),
-            })
-        });
-        let word = match kind {
-            Kind::AmountMm => depth.word,
-            Kind::AmountMmDays => area.word,
-            Kind::Share => "percentage points",
-            Kind::DayCount => "days",
-            Kind::DayOfWaterYear | Kind::ArrivalDay => "d",
+        let unit = |number: f64| match kind {
+            Kind::AmountMm => self.units.depth().of(number),
+            Kind::AmountMmDays => self.units.depth_days().of(number),
+            Kind::Share => 100.0 * number,
+            Kind::DayCount | Kind::DayOfWaterYear | Kind::ArrivalDay => number,
         };
-        // Changes of dates are told in whole days; their error is mostly a fraction of one.
-        let error = error.map_or(String::new(), |(error, decimals)| {
-            format!(" ± {}", fixed(error, if kind.is_date() { 1 } else { decimals }))
-        });
-        let change = change.map_or(String::new(), |(change, decimals)| signed(change, decimals));
-        format!("{change}{error} {word}")
+        let (decimals, word) = match kind {
+            Kind::AmountMm => (self.amount_decimals(change), ""),
+            Kind::AmountMmDays => (0, ""),
+            Kind::Share => (share_decimals(change), " points"),
+            Kind::DayCount => (1, " days"),
+            Kind::DayOfWaterYear | Kind::ArrivalDay => (0, " d"),
+        };
+        let error = error.map_or(String::new(), |error| format!(" ± {}", precision(unit(error))));
+        format!("{}{error}{word}", signed(unit(change), decimals))
     }
 }
 
@@ -234,16 +225,13 @@ mod tests {
         assert_eq!(said(Kind::DayCount, 1.25), "1.3 days");
         assert_eq!([Kind::DayOfWaterYear, Kind::ArrivalDay].map(|kind| said(kind, 183.0)), ["1 April"; 2]);
         assert_eq!(metric.outcome(Outcome::NotReached, Kind::ArrivalDay), "not reached");
-        assert_eq!(metric.change_of(Kind::Share, -0.12, None), "−12 percentage points");
-        assert_eq!(us.change_of(Kind::AmountMmDays, -254.0, None), "−10 in days");
+        assert_eq!(metric.change_of(Kind::Share, -0.12, None), "−12 points");
+        assert_eq!(us.change_of(Kind::AmountMmDays, -254.0, None), "−10");
         assert_eq!(metric.change_of(Kind::DayCount, 0.5, None), "+0.5 days");
-        assert_eq!(
-            [-112.0, 12.0].map(|mm| metric.change_of(Kind::AmountMm, mm, None)),
-            ["−112 mm", "+12 mm"]
-        );
+        assert_eq!([-112.0, 12.0].map(|mm| metric.change_of(Kind::AmountMm, mm, None)), ["−112", "+12"]);
         assert_eq!(metric.change_of(Kind::ArrivalDay, -11.6, None), "−12 d");
         assert_eq!(metric.change_of(Kind::ArrivalDay, -11.6, Some(0.44)), "−12 ± 0.4 d");
-        assert_eq!(metric.change_of(Kind::AmountMm, -112.0, Some(2.7)), "−112 ± 2.7 mm");
+        assert_eq!(metric.change_of(Kind::AmountMm, -112.0, Some(2.7)), "−112 ± 2.7");
     }
 
     /// By hand: 1830 m / 0.3048; 0.5 and 3.5 mm per degC are 0.5 / 25.4 / 1.8 and 3.5 / 25.4 / 1.8 in per degF; 7 %

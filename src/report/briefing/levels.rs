@@ -26,8 +26,8 @@ pub(super) fn table(study: &Study<'_>, is_asked: impl Fn(&MeasureFindings) -> bo
         div.scroll { table {
             caption {
                 "Basin mean, median over " (findings.realizations) " realizations of " (findings.years)
-                "-year values; below it the median paired change from the reference ± its Monte Carlo error, its percentage, and how \
-                 many times the half spread it is."
+                "-year values; below it the median paired change from the reference ± its Monte Carlo error, in the same unit (points are \
+                 percentage points), its percentage, and how many times the half spread it is."
             }
             thead { tr {
                 th scope="col" { "Measure" }

@@ -1,6 +1,6 @@
 //! Water: volumes of single years by chance of exceedance, and around stated dates.
 
-use super::super::numbers::{DASH, fixed, signed};
+use super::super::numbers::{DASH, fixed, precision, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
 use super::{Figures, levels};
@@ -25,7 +25,10 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
         (figures.of(Part::Volumes))
         @for measure in volumes.iter().take(IN_FULL) { (by_chance(findings, measure, reader)) }
         (half_of_the_years(findings, &volumes, reader))
-        (levels::table(study, |of| of.measure.is_volume))
+        details {
+            summary { "The same as depths over the basin, over periods of " (findings.years) " years" }
+            (levels::table(study, |of| of.measure.is_volume))
+        }
     } }
 }
 
@@ -92,6 +95,6 @@ fn half_of_the_years(findings: &Findings, volumes: &[&MeasureFindings], reader: 
 fn volume(volume_hm3: Estimate, reader: Reader) -> String {
     let error = volume_hm3
         .monte_carlo_error
-        .map_or(String::new(), |error| format!(" ± {}", reader.volume_bare(error)));
+        .map_or(String::new(), |error| format!(" ± {}", precision(reader.units.volume().of(error))));
     format!("{}{error}", reader.volume_bare(volume_hm3.value))
 }
