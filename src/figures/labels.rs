@@ -26,13 +26,13 @@ pub(super) fn size_and_unit(units: UnitSystem, amount_mm: f64) -> String {
     format!("{} {}", size(units, amount_mm), units.depth().word)
 }
 
-/// `1 240`, `112`, `4.3`, `0.30`: a volume of water without its unit.
+/// `1 240`, `112`, `41.4`, `4.30`: a volume of water without its unit, to three digits.
 pub(super) fn volume(units: UnitSystem, volume_hm3: f64) -> String {
     let volume = units.volume().of(volume_hm3);
     let decimals = match volume {
         0.0 => 0,
-        ..0.995 => 2,
-        ..9.95 => 1,
+        ..9.995 => 2,
+        ..99.95 => 1,
         _ => 0,
     };
     grouped(volume, decimals)
@@ -187,8 +187,9 @@ mod tests {
 
     #[test]
     fn volumes_and_bands_are_rounded_to_what_a_reader_can_use() {
-        let written = [1240.4, 112.4, 9.96, 4.34, 0.3, 0.0].map(|hm3| volume(UnitSystem::Metric, hm3));
-        assert_eq!(written, ["1\u{2009}240", "112", "10", "4.3", "0.30", "0"]);
+        let written =
+            [1240.4, 99.96, 41.38, 9.996, 4.34, 0.3, 0.0].map(|hm3| volume(UnitSystem::Metric, hm3));
+        assert_eq!(written, ["1\u{2009}240", "100", "41.4", "10.0", "4.34", "0.30", "0"]);
         let of = |lower_m, upper_m| Band { lower_m, upper_m, area_km2: 1.0, elevation_m: lower_m };
         assert_eq!(band(UnitSystem::Metric, &of(900.0, 1200.0)), "900–1\u{2009}200 m");
         assert_eq!(band(UnitSystem::Us, &of(-304.8, 0.0)), "−1\u{2009}000–0 ft");

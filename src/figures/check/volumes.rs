@@ -16,16 +16,16 @@ fn draw(study: &Study<'_>, units: UnitSystem) -> Option<Svg> {
 fn titles_say_what_nine_in_ten_years_bring() {
     assert_eq!(
         draw(&PLAIN, UnitSystem::Metric).unwrap().title,
-        "Snowpack outflow, 1 April to 31 July: in 9 of 10 years at least 41 hm³ at the reference, 17 hm³ at +4 °C"
+        "Snowpack outflow, 1 April to 31 July: in 9 of 10 years at least 41.4 hm³ at the reference, 16.5 hm³ at +4 °C"
     );
     assert_eq!(
         draw(&PLAIN, UnitSystem::Us).unwrap().title,
-        "Snowpack outflow, 1 April to 31 July: in 9 of 10 years at least 34 thousand acre-feet at the reference, 13 thousand \
+        "Snowpack outflow, 1 April to 31 July: in 9 of 10 years at least 33.5 thousand acre-feet at the reference, 13.4 thousand \
          acre-feet at +7.2 °F"
     );
     let alone = draw(&Study { levels_c: &[0.0], ..PLAIN }, UnitSystem::Metric).unwrap();
     assert!(
-        alone.title.ends_with("at least 41 hm³ at the reference; no other level was run"),
+        alone.title.ends_with("at least 41.4 hm³ at the reference; no other level was run"),
         "{}",
         alone.title
     );
