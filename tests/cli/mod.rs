@@ -11,5 +11,6 @@ mod results;
 mod scenario_faults;
 mod season_keys;
 mod streams;
+mod tables;
 mod units;
 mod verdict;
