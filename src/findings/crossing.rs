@@ -77,7 +77,7 @@ pub(super) fn crossing_range(reference_c: f64, ratios: &[(f64, Vec<Option<f64>>)
     }))
 }
 
-/// The 5-95 % range of first crossings; nothing where one is unknown.
+/// The 5-95 % range of first crossings; nothing where one is unknown or there are none.
 pub(super) fn range_of(crossings: impl Iterator<Item = Crossing>) -> Option<CrossingRange> {
     let found = crossings
         .map(|crossing| match crossing {
@@ -86,7 +86,24 @@ pub(super) fn range_of(crossings: impl Iterator<Item = Crossing>) -> Option<Cros
             Crossing::Unknown => None,
         })
         .collect::<Option<Vec<f64>>>()?;
+    if found.is_empty() {
+        return None;
+    }
     let found = sorted(found);
     let reached = |p| Some(quantile(&found, p)).filter(|level_c| level_c.is_finite());
     Some(CrossingRange { q05_c: reached(0.05), q95_c: reached(0.95) })
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    /// A reference that does not spread gives no ratio in any resample: that is no range that lies above every level.
+    #[test]
+    fn no_ratios_have_no_range() {
+        assert_eq!(crossing_range(0.0, &[(1.0, Vec::new()), (2.0, Vec::new())]), None);
+        assert_eq!(crossing_range(0.0, &[(1.0, vec![None; 3]), (2.0, vec![Some(2.0); 3])]), None);
+        let never = crossing_range(0.0, &[(1.0, vec![Some(0.5); 3])]);
+        assert_eq!(never, Some(CrossingRange { q05_c: None, q95_c: None }));
+    }
 }

@@ -2,7 +2,7 @@
 
 use super::numbers::counted;
 use super::study::Study;
-use super::tables::{ReportFile, finish, optional, write};
+use super::tables::{ReportFile, finish, optional, write, yes_or_no};
 use crate::baseline::{BaselineChoice, BaselineYears, ENOUGH_BASELINE_YEARS, USUAL_BASELINE};
 use crate::findings::{MedianSwe, RecordFindings};
 use csv::Writer;
@@ -128,8 +128,4 @@ fn medians(study: &Study<'_>, record: &RecordFindings) -> Vec<u8> {
 
 fn flag(median: &MedianSwe) -> String {
     if median.is_unstable { "unstable".to_owned() } else { String::new() }
-}
-
-fn yes_or_no(is: bool) -> String {
-    if is { "yes" } else { "no" }.to_owned()
 }

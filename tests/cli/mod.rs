@@ -1,8 +1,10 @@
 //! The program as a user runs it: whole commands, their output, their files and their exit status.
 
 pub mod basin;
+mod closed_form;
 mod corpus;
 mod data_faults;
+mod identities;
 mod interrupt;
 mod keys;
 mod normal;
@@ -11,5 +13,6 @@ mod results;
 mod scenario_faults;
 mod season_keys;
 mod streams;
+mod tables;
 mod units;
 mod verdict;

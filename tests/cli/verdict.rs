@@ -27,6 +27,12 @@ fn the_demos_speak_for_their_numbers() {
     assert!(page.contains(sentence));
     let verdict = cold["answer"]["verdict"].as_str().unwrap();
     assert!(verdict.ends_with("up to there, precipitation outweighs the warming."), "{verdict}");
+    // A degree there is made up by a few percent, which precipitation's chance brings often; by the wider assumption no level
+    // of the study outweighs it.
+    assert!(said(&cold, "yardstick").contains("with twice as much, at no level up to +4 °C"));
+    let break_even = &cold["findings"]["break_even"]["levels"][0];
+    assert!((0.0..5.0).contains(&break_even["precipitation_change_pct"].as_f64().unwrap()), "{break_even}");
+    assert!(break_even["realizations_that_reached"].as_u64().unwrap() > 300 / 4, "{break_even}");
 
     let (main, page) = study(&basin, "demo/scenarios/alder-fork.toml");
     let ratio = |level: usize| {
@@ -66,11 +72,51 @@ fn a_wide_assumption_turns_the_verdict() {
     basin.exchange("count = 12", "count = 60");
     let (narrow, _) = study(&basin, "scenario.toml");
     assert_eq!(narrow["findings"]["basin"][0]["outweighs"]["crossing"], "at");
+    assert!(said(&narrow, "yardstick").contains("Against one standard deviation, the shorter measure that studies of emergence use, it outweighs from +"));
+    assert!(said(&narrow, "yardstick").contains("warming outweighs at +2 °C"));
     basin.exchange("years = 5", "years = 5\nmean_change_sd_pct = 60");
     let (wide, page) = study(&basin, "scenario.toml");
     assert_eq!(wide["findings"]["basin"][0]["outweighs"]["crossing"], "not_reached");
     let verdict = wide["answer"]["verdict"].as_str().unwrap();
     assert!(verdict.contains("does not outweigh") && page.contains(verdict), "{verdict}");
+    let yardstick = said(&wide, "yardstick");
+    for words in [
+        "with half of it, at no level up to +2 °C; with twice as much, at no level up to +2 °C",
+        "the spread of single years at no level up to +2 °C",
+        "Against one standard deviation, the shorter measure that studies of emergence use, it outweighs at no level up to",
+        "no realization is warm or cool by chance, it outweighs at no level up to +2 °C",
+        "without it, from +",
+        "the verdict hangs on the yardstick at +2 °C",
+    ] {
+        assert!(yardstick.contains(words), "{words}: {yardstick}");
+    }
+    let how_sure = said(&wide, "how_sure");
+    assert!(
+        how_sure.contains("would put the warming from which it outweighs above +2.0 °C (Monte Carlo"),
+        "{how_sure}"
+    );
+    let level = &wide["findings"]["break_even"]["levels"][0];
+    let [pct, reached] =
+        ["precipitation_change_pct", "realizations_that_reached"].map(|name| level[name].as_f64().unwrap());
+    assert!(0.0 < pct && pct < 60.0 / 4.0 && reached > 60.0 / 4.0, "{level}");
+    let before = &narrow["findings"]["break_even"]["levels"][0];
+    assert_eq!(
+        before["precipitation_change_pct"], level["precipitation_change_pct"],
+        "no change is assumed in it"
+    );
+    assert!(before["realizations_that_reached"].as_f64().unwrap() < reached / 2.0, "{before}");
+    let sentence = said(&wide, "break_even");
+    assert!(
+        sentence.contains(&format!("At +2 °C, {pct:.0} % more precipitation"))
+            && sentence.contains(&format!("{reached:.0} of the 60 realizations came to so much")),
+        "{sentence}"
+    );
+}
+
+/// A part of the answer as one text.
+fn said(summary: &Value, part: &str) -> String {
+    let words = summary["answer"][part].as_array().unwrap().iter().map(|words| words.as_str().unwrap());
+    words.collect::<Vec<_>>().join("\n")
 }
 
 /// Where no snow lies there is no timing and no percentage: none, counted, and never a zero or a date.
@@ -89,6 +135,12 @@ fn a_basin_without_snow() {
     );
     assert_eq!(melt_out["years_undefined"][0], 60);
     assert!(page.contains("12 none"));
+    // Nothing that was never there can be made up or outweighed.
+    for part in ["break_even", "how_sure", "chances", "timing"] {
+        assert_eq!(said(&summary, part), "", "{part}");
+    }
+    assert!(summary["answer"]["verdict"].as_str().unwrap().starts_with("There is hardly any snow to lose"));
+    assert!(!said(&summary, "yardstick").contains("cannot be told"));
 }
 
 /// Cooler levels are not called warmer, a rise is a rise, and a study that compares nothing claims nothing.
@@ -105,7 +157,14 @@ fn other_levels_than_warmer_ones() {
 
     basin.exchange("levels_c = [-2]", "levels_c = [0]");
     let (alone, page) = study(&basin, "scenario.toml");
-    assert_eq!(alone["answer"]["amounts"].as_array().map(Vec::len), Some(0));
+    for part in ["amounts", "how_sure", "timing", "break_even", "chances"] {
+        assert_eq!(said(&alone, part), "", "{part}");
+    }
+    assert!(alone["answer"]["volumes"].is_null() && alone["answer"]["elevation"].is_null());
+    let yardstick = said(&alone, "yardstick");
+    assert!(
+        yardstick.contains("median") && !yardstick.contains("it outweighs") && !yardstick.contains("be told")
+    );
     assert!(!page.contains("the verdict is the same at every level"));
 }
 

@@ -13,8 +13,8 @@ use thawline::snow::{Lanes, Path};
 use thawline::weather::Series;
 
 /// Everything that a study of a random scenario needs. The first survey date is the water year's first day.
-struct Study {
-    record: Series,
+pub(super) struct Study {
+    pub(super) record: Series,
     lanes: Lanes,
     measures: Measures,
     levels: usize,
@@ -22,7 +22,7 @@ struct Study {
 }
 
 impl Study {
-    fn of(scenario: &Scenario, changes: &[MonthlyChange]) -> Self {
+    pub(super) fn of(scenario: &Scenario, changes: &[MonthlyChange]) -> Self {
         let start = scenario.climate.start();
         let survey = MonthDay::new(if scenario.climate.is_southern { 10 } else { 4 }, 1).expect("a day");
         Self {
@@ -65,7 +65,13 @@ impl Study {
         self.run_from(&self.generator(&self.record), threads, realizations, path)
     }
 
-    fn run_from(&self, from: &dyn Generator, threads: usize, realizations: u32, path: Path) -> Seasons {
+    pub(super) fn run_from(
+        &self,
+        from: &dyn Generator,
+        threads: usize,
+        realizations: u32,
+        path: Path,
+    ) -> Seasons {
         let bins = SweBins::of_record(&self.lanes, &self.record).expect("a closed ledger");
         let pool = ThreadPoolBuilder::new().num_threads(threads).build().expect("threads");
         pool.install(|| run(&self.plan(from, realizations, path), bins, &Silent)).expect("a closed ledger")

@@ -3,6 +3,7 @@
 mod degrees;
 mod engine;
 mod ensemble;
+mod findings;
 mod mass;
 mod realizations;
 mod same_bits;

@@ -31,21 +31,24 @@ pub(super) fn yardstick(findings: &Findings, headline: &MeasureFindings, reader:
             .yardsticks
             .iter()
             .filter(own)
-            .filter(|of| of.times_assumed != 1.0)
+            .filter(|of| of.times_assumed != 1.0 && can_be_told(of.outweighs))
             .map(|of| format!("{}, {}", of_assumption(of), from_where_on(of.outweighs, reader)))
             .collect();
+        let others = match others.as_slice() {
+            [] => String::new(),
+            others => format!(" The warming outweighs {}.", others.join("; ")),
+        };
         format!(
             "It holds an assumed change of mean precipitation, normal with a standard deviation of {} %: an assumption \
-             about the future. The warming outweighs {}.",
-            fixed(study.mean_change_sd_pct, 1),
-            others.join("; ")
+             about the future.{others}",
+            fixed(study.mean_change_sd_pct, 1)
         )
     } else {
         "No change of mean precipitation is assumed: the spread holds only the order and choice of the record's own years."
             .to_owned()
     });
-    let periods =
-        headline.yardsticks.iter().filter(|of| of.times_assumed == 1.0 && of.years != findings.years);
+    let periods = headline.yardsticks.iter().filter(|of| of.times_assumed == 1.0 && !own(of));
+    let periods = periods.filter(|of| can_be_told(of.outweighs));
     let periods: Vec<String> = periods
         .map(|of| {
             let what = match of.years {
@@ -58,11 +61,13 @@ pub(super) fn yardstick(findings: &Findings, headline: &MeasureFindings, reader:
     if !periods.is_empty() {
         words.push(format!("The same shift outweighs {}.", periods.join(", ")));
     }
-    words.push(format!(
-        "Against one standard deviation, the shorter measure that studies of emergence use, it outweighs {}.",
-        from_where_on(study.outweighs_standard_deviation, reader)
-    ));
-    if let Some(held) = &headline.temperature_held {
+    if can_be_told(study.outweighs_standard_deviation) {
+        words.push(format!(
+            "Against one standard deviation, the shorter measure that studies of emergence use, it outweighs {}.",
+            from_where_on(study.outweighs_standard_deviation, reader)
+        ));
+    }
+    if let Some(held) = headline.temperature_held.as_ref().filter(|held| can_be_told(held.outweighs)) {
         words.push(format!(
             "With every month's mean temperature held at the record's, so that no realization is warm or cool by chance, it \
              outweighs {}.",
@@ -71,6 +76,11 @@ pub(super) fn yardstick(findings: &Findings, headline: &MeasureFindings, reader:
     }
     words.extend(hangs(findings, headline, reader));
     words
+}
+
+/// Whether there is anything to say: not without a level above the reference, nor of a reference that does not spread.
+fn can_be_told(crossing: Crossing) -> bool {
+    crossing != Crossing::Unknown
 }
 
 fn of_assumption(of: &Yardstick) -> &'static str {

@@ -1,0 +1,114 @@
+//! Cells: a number in the reader's units, empty where there is none, and the names of columns' units.
+
+use crate::findings::{Chance, Crossing, Distribution, Estimate, Range};
+use crate::season::{Kind, Measure, Outcome};
+use crate::units::UnitSystem;
+use csv::Writer;
+
+/// The name of a measure with the unit in which it is told: `swe_04_01_in`.
+pub(super) fn name(measure: &Measure, units: UnitSystem) -> String {
+    let (metric, suffix) = match measure.kind {
+        Kind::AmountMm => (UnitSystem::Metric.depth().suffix, units.depth().suffix),
+        Kind::AmountMmDays => (UnitSystem::Metric.depth_days().suffix, units.depth_days().suffix),
+        Kind::Share | Kind::DayCount | Kind::DayOfWaterYear | Kind::ArrivalDay => {
+            return measure.name.clone();
+        }
+    };
+    let name = measure.name.strip_suffix(metric);
+    name.map_or_else(|| measure.name.clone(), |name| format!("{name}{suffix}"))
+}
+
+/// The units in which measures of a kind are told, for values and for changes: in a header or, where a table holds several
+/// kinds, in columns of their own.
+pub(super) fn unit_names(kind: Kind, units: UnitSystem) -> [&'static str; 2] {
+    match kind {
+        Kind::AmountMm => [units.depth().suffix; 2],
+        Kind::AmountMmDays => [units.depth_days().suffix; 2],
+        Kind::Share => ["share"; 2],
+        Kind::DayCount => ["days"; 2],
+        Kind::DayOfWaterYear | Kind::ArrivalDay => ["day_of_water_year", "days"],
+    }
+}
+
+/// How a measure's values are told.
+#[derive(Clone, Copy)]
+pub(super) struct Told {
+    pub units: UnitSystem,
+    pub kind: Kind,
+}
+
+impl Told {
+    /// A value or a change in the reader's units.
+    pub fn in_units(self, value: f64) -> f64 {
+        match self.kind {
+            Kind::AmountMm => self.units.depth().of(value),
+            Kind::AmountMmDays => self.units.depth_days().of(value),
+            Kind::Share | Kind::DayCount | Kind::DayOfWaterYear | Kind::ArrivalDay => value,
+        }
+    }
+
+    fn number(self, value: f64) -> String {
+        self.in_units(value).to_string()
+    }
+
+    /// A number, or the words `none`, `not gone` and `not reached`.
+    pub fn outcome(self, outcome: Outcome) -> String {
+        match outcome {
+            Outcome::Value(value) => self.number(value),
+            Outcome::None => "none".to_owned(),
+            Outcome::NotGone => "not gone".to_owned(),
+            Outcome::NotReached => "not reached".to_owned(),
+        }
+    }
+
+    pub fn change(self, change: Option<f64>) -> String {
+        change.map_or(String::new(), |change| self.number(change))
+    }
+
+    pub fn quantiles(self, distribution: &Distribution) -> [String; 5] {
+        [distribution.q05, distribution.q25, distribution.q50, distribution.q75, distribution.q95]
+            .map(|outcome| self.outcome(outcome))
+    }
+}
+
+pub(in super::super) fn optional(value: Option<f64>) -> String {
+    value.map_or(String::new(), |value| value.to_string())
+}
+
+pub(in super::super) fn yes_or_no(is: bool) -> String {
+    if is { "yes" } else { "no" }.to_owned()
+}
+
+pub(super) fn estimate(estimate: Option<Estimate>) -> [String; 2] {
+    [optional(estimate.map(|e| e.value)), optional(estimate.and_then(|e| e.monte_carlo_error))]
+}
+
+pub(super) fn chance(chance: Option<Chance>) -> [String; 3] {
+    let [value, error] = estimate(chance.map(|chance| chance.estimate));
+    [value, error, optional(chance.and_then(|chance| chance.bound))]
+}
+
+/// The ends of a range over resampled records, told as changes are.
+pub(super) fn range(range: Option<Range>, told: impl Fn(f64) -> f64) -> [String; 2] {
+    [range.map(|range| range.q05), range.map(|range| range.q95)].map(|end| optional(end.map(&told)))
+}
+
+/// Whether a shift comes to outweigh a spread, `at`, `not reached` or `unknown`, from which warming on, and until which.
+pub(super) fn outweighs(crossing: Crossing, units: UnitSystem) -> [String; 3] {
+    let (word, from_c, until_c) = match crossing {
+        Crossing::At { level_c, until_c } => ("at", Some(level_c), until_c),
+        Crossing::NotReached { .. } => ("not reached", None, None),
+        Crossing::Unknown => ("unknown", None, None),
+    };
+    let [from, until] = [from_c, until_c].map(|at_c| optional(at_c.map(|at_c| units.warming().of(at_c))));
+    [word.to_owned(), from, until]
+}
+
+/// Writing to memory cannot fail.
+pub(in super::super) fn write(writer: &mut Writer<Vec<u8>>, row: &[String]) {
+    let _ = writer.write_record(row);
+}
+
+pub(in super::super) fn finish(writer: Writer<Vec<u8>>) -> Vec<u8> {
+    writer.into_inner().unwrap_or_default()
+}
