@@ -100,11 +100,15 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
     let (_, _, realizations, years) = study.basin.years.dim();
     let resamples = Resamples::new(questions.seed, realizations);
     let levels = Levels { levels_c: questions.levels_c, reference: questions.reference };
-    let asked = |of: &Asked<'_>| {
-        if watch.wants_stop() { Err(Halt::Stopped) } else { Ok(of.find(levels, &resamples)) }
-    };
+    // Every band has every measure: their errors are known from fewer resamples than the basin's.
     let few = resamples.few();
-    let of_basin = |at: usize| Ok(runs.beside(at, asked(&runs.of_basin(at, questions))?, questions, &few));
+    let asked = |of: &Asked<'_>, resamples: &Resamples| {
+        if watch.wants_stop() { Err(Halt::Stopped) } else { Ok(of.find(levels, resamples)) }
+    };
+    let of_basin = |at: usize| {
+        let found = asked(&runs.of_basin(at, questions), &resamples)?;
+        Ok(runs.beside(at, found, questions, &few))
+    };
     let basin = (0..measures.len()).into_par_iter().map(of_basin).collect::<Result<Vec<_>, Halt>>()?;
     let of_bands: Vec<Asked<'_>> = (0..questions.bands.len())
         .flat_map(|band| {
@@ -112,7 +116,8 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
             measures.iter().enumerate().filter(everywhere).map(move |(at, _)| runs.of_band(band, at))
         })
         .collect();
-    let mut of_each_band = of_bands.par_iter().map(asked).collect::<Result<Vec<_>, Halt>>()?.into_iter();
+    let mut of_each_band =
+        of_bands.par_iter().map(|of| asked(of, &few)).collect::<Result<Vec<_>, Halt>>()?.into_iter();
     let measures_of_a_band = of_bands.len() / questions.bands.len();
     let bands = questions.bands.iter().map(|band| BandFindings {
         band: *band,

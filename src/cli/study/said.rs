@@ -31,7 +31,7 @@ fn every_number_of_the_page_stands_in_the_summary() {
     crate::cli::start::run(folder.path(), &shared).unwrap();
     let path = folder.path().join("scenarios/alder-fork.toml");
     let scenario = std::fs::read_to_string(&path).unwrap();
-    let scenario = scenario.replace("count = 300", "count = 40").replace("years = 30", "years = 12");
+    let scenario = scenario.replace("[realizations]\n", "[realizations]\ncount = 40\nyears = 12\n");
     std::fs::write(&path, scenario).unwrap();
 
     let ready = assemble(&path, &shared).unwrap();
