@@ -10,7 +10,7 @@ use super::runs;
 use crate::ensemble::RecordYear;
 use crate::fault::Fault;
 use crate::figures::{FIGURES, Setting, of_sites};
-use crate::findings::Findings;
+use crate::findings::{BandFindings, Findings};
 use crate::report::numbers::counted;
 use crate::report::{
     Answer, Reader, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html, manifest_json,
@@ -117,6 +117,7 @@ fn describe<'a>(
         basin: &ready.basin,
         station_elevation_m: scenario.weather.station_elevation_m,
         beyond_stations: ready.basin.beyond(&ready.stations_m()),
+        swe_beyond_stations: ready.basin.swe_beyond(&ready.stations_m(), &reference_swe_mm(findings)),
         gauge_multiplier: scenario.weather.gauge_multiplier,
         season: measures.settings(),
         snow: &scenario.snow,
@@ -137,6 +138,15 @@ fn describe<'a>(
         unlikely: &ready.unlikely,
         origin: ready.origin("study", path, shared),
     }
+}
+
+/// Median of the headline measure in each band at the reference, mm; 0 where there is none.
+fn reference_swe_mm(findings: &Findings) -> Vec<f64> {
+    let of_band = |band: &BandFindings| {
+        let headline = band.measures.first()?;
+        headline.levels[findings.reference].periods.q50.value()
+    };
+    findings.bands.iter().map(|band| of_band(band).unwrap_or(0.0)).collect()
 }
 
 fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Failure> {

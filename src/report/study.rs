@@ -24,6 +24,8 @@ pub struct Study<'a> {
     pub station_elevation_m: f64,
     /// Area of the basin beyond its stations.
     pub beyond_stations: Option<BeyondStations>,
+    /// Snow of the headline measure, at the reference, beyond its stations.
+    pub swe_beyond_stations: Option<BeyondStations>,
     /// Gauge catch.
     pub gauge_multiplier: GaugeMultiplier,
     /// Dates and windows.

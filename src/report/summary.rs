@@ -45,6 +45,7 @@ struct BasinSummary {
     precipitation_over_station: f64,
     mean_precipitation_mm: f64,
     area_beyond_stations: Option<BeyondStations>,
+    reference_swe_beyond_stations: Option<BeyondStations>,
 }
 
 #[derive(Serialize)]
@@ -101,6 +102,7 @@ pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Ve
             precipitation_over_station: ratio,
             mean_precipitation_mm: ratio * study.record.mean_precipitation_mm,
             area_beyond_stations: study.beyond_stations,
+            reference_swe_beyond_stations: study.swe_beyond_stations,
         },
         record: RecordSummary {
             counts: study.record.counts,

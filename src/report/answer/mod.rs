@@ -9,7 +9,6 @@ mod volumes;
 mod yardstick;
 
 pub use chance::{chance_in_table, towards_shift};
-pub(super) use yardstick::from_where_on;
 
 use super::reader::Reader;
 use crate::findings::{Findings, LevelFindings, MeasureFindings};

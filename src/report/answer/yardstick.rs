@@ -1,6 +1,6 @@
 //! What the verdict measures with, and what it would be with another measure.
 
-use super::super::numbers::fixed;
+use super::super::numbers::{fixed, trimmed};
 use super::super::reader::Reader;
 use super::period_name;
 use crate::findings::{Crossing, Findings, MeasureFindings, Yardstick};
@@ -32,16 +32,16 @@ pub(super) fn yardstick(findings: &Findings, headline: &MeasureFindings, reader:
             .iter()
             .filter(own)
             .filter(|of| of.times_assumed != 1.0 && can_be_told(of.outweighs))
-            .map(|of| format!("{}, {}", of_assumption(of), from_where_on(of.outweighs, reader)))
+            .map(|of| format!("{} {}", from_where_on(of.outweighs, reader), of_assumption(of)))
             .collect();
         let others = match others.as_slice() {
             [] => String::new(),
-            others => format!(" The warming outweighs {}.", others.join("; ")),
+            others => format!(" The warming outweighs {}.", others.join(", ")),
         };
         format!(
             "It holds an assumed change of mean precipitation, normal with a standard deviation of {} %: an assumption \
              about the future.{others}",
-            fixed(study.mean_change_sd_pct, 1)
+            trimmed(&fixed(study.mean_change_sd_pct, 1))
         )
     } else {
         "No change of mean precipitation is assumed: the spread holds only the order and choice of the record's own years."
@@ -92,7 +92,7 @@ fn of_assumption(of: &Yardstick) -> &'static str {
 }
 
 /// `from +1.4 °C on`, `from +1.2 °C to +3.0 °C`, `at no level up to +4 °C`: goes on from 'outweighs'.
-pub(in crate::report) fn from_where_on(crossing: Crossing, reader: Reader) -> String {
+fn from_where_on(crossing: Crossing, reader: Reader) -> String {
     match crossing {
         Crossing::At { level_c, until_c: None } => format!("from {} on", reader.between_levels(level_c)),
         Crossing::At { level_c, until_c: Some(until_c) } => {

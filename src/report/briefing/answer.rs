@@ -1,7 +1,7 @@
 //! The answer: the verdict, the questions that a reader asks next, and a line a level.
 
 use super::super::answer::{Answer, chance_in_table, towards_shift};
-use super::super::numbers::{DASH, days_moved, fixed, signed};
+use super::super::numbers::{DASH, days_moved, fixed, precision, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
 use crate::findings::{Estimate, Findings, MeasureFindings};
@@ -63,6 +63,6 @@ fn by_level(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> 
 
 /// `1.48 ± 0.09`.
 pub(super) fn ratio(ratio: Estimate) -> String {
-    let error = ratio.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
+    let error = ratio.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", precision(error)));
     format!("{}{error}", fixed(ratio.value, 2))
 }

@@ -1,7 +1,7 @@
 //! Where: the headline measure by elevation band.
 
 use super::super::answer::period_name;
-use super::super::numbers::signed;
+use super::super::numbers::{fixed, signed};
 use super::super::study::Study;
 use super::{Figures, levels};
 use crate::figures::Part;
@@ -14,6 +14,11 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     html! { @if let Some(headline) = findings.basin.first() {
         h2 { "Where it is lost" }
         (figures.of(Part::Elevation))
+        @if let (Some(area), Some(snow)) = (study.beyond_stations, study.swe_beyond_stations) { p {
+            "Above the highest station lie " (fixed(100.0 * area.share_above, 0)) " % of the area and " (fixed(100.0 * snow.share_above, 0))
+            " % of the reference's " (headline.measure.title) "; below the lowest, " (fixed(100.0 * area.share_below, 0)) " and "
+            (fixed(100.0 * snow.share_below, 0)) " %. There the numbers hang on the gradients alone."
+        } }
         div.scroll { table {
             caption {
                 "By elevation: " (period_name(findings, headline)) ", median over realizations; in brackets the change from the reference, \

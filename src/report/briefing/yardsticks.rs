@@ -1,7 +1,7 @@
 //! The verdict by other yardsticks, and what would make up for the warming.
 
-use super::super::answer::{Answer, from_where_on, period_name};
-use super::super::numbers::{DASH, fixed};
+use super::super::answer::{Answer, period_name};
+use super::super::numbers::{DASH, fixed, trimmed};
 use super::super::reader::Reader;
 use super::super::study::Study;
 use super::answer::ratio;
@@ -76,8 +76,8 @@ fn table(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> Mar
                 th scope="col" { "Spread of" }
                 th scope="col" { "5–95 %, " (reader.units.depth().word) }
                 @for level_c in &others { th scope="col" { (reader.level(*level_c)) } }
-                th.text scope="col" { "Outweighs" }
-                th.text scope="col" { "One standard deviation" }
+                th scope="col" { "Outweighs" br; "from" }
+                th scope="col" { "One standard" br; "deviation, from" }
             } }
             tbody { @for row in &rows { tr {
                 th scope="row" { (row.name) }
@@ -86,18 +86,30 @@ fn table(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> Mar
                     None => { (DASH) }
                 } }
                 @for found in &row.ratios { td { (found.map_or_else(|| DASH.to_owned(), ratio)) } }
-                td.text { (from_where_on(row.outweighs, reader)) }
-                td.text { (row.standard_deviation.map_or_else(|| DASH.to_owned(), |crossing| from_where_on(*crossing, reader))) }
+                td { (crossing(row.outweighs, reader)) }
+                td { (row.standard_deviation.map_or_else(|| DASH.to_owned(), |of| crossing(*of, reader))) }
             } } }
         } }
     }
 }
 
-/// `30-year values, ± 8.0 % assumed`, `single years, no change assumed`.
+/// `+1.4 °C`, `+1.2 to +3.0 °C`, `not by +4 °C`: the crossing in a cell.
+fn crossing(crossing: Crossing, reader: Reader) -> String {
+    match crossing {
+        Crossing::At { level_c, until_c: None } => reader.between_levels(level_c),
+        Crossing::At { level_c, until_c: Some(until_c) } => {
+            format!("{} to {}", reader.between_levels_bare(level_c), reader.between_levels(until_c))
+        }
+        Crossing::NotReached { up_to_c } => format!("not by {}", reader.level(up_to_c)),
+        Crossing::Unknown => DASH.to_owned(),
+    }
+}
+
+/// `30-year values, ± 8 % assumed`, `single years, no change assumed`.
 fn name(of: &Yardstick) -> String {
     let years = if of.years == 1 { "single years".to_owned() } else { format!("{}-year values", of.years) };
     if of.mean_change_sd_pct > 0.0 {
-        format!("{years}, ± {} % assumed", fixed(of.mean_change_sd_pct, 1))
+        format!("{years}, ± {} % assumed", trimmed(&fixed(of.mean_change_sd_pct, 1)))
     } else {
         format!("{years}, no change assumed")
     }
