@@ -46,7 +46,7 @@ fn deviation(values: &[f64]) -> f64 {
 }
 
 /// Means over pieces of so many years of each realization.
-fn pieces(of: ArrayView2<'_, f64>, years: usize) -> Vec<f64> {
+fn pieces(of: &ArrayView2<'_, f64>, years: usize) -> Vec<f64> {
     let mut means = Vec::new();
     for row in of.rows() {
         let row = row.to_vec();
@@ -99,7 +99,7 @@ fn first_crossing(levels_c: &[f64], ratios: &[f64]) -> Option<f64> {
 fn check(found: &MeasureFindings, years: &[ArrayView2<'_, f64>], area_km2: f64, levels_c: &[f64]) {
     let name = &found.measure.name;
     let single = |level: usize| years[level].iter().copied().collect::<Vec<f64>>();
-    let periods = |level: usize| pieces(years[level], YEARS);
+    let periods = |level: usize| pieces(&years[level], YEARS);
     let reference = periods(0);
     assert!(holds_spread(found.precipitation_spread, &reference), "{name}");
     assert!(holds_spread(found.weather_spread, &single(0)), "{name}");
@@ -147,7 +147,7 @@ fn check(found: &MeasureFindings, years: &[ArrayView2<'_, f64>], area_km2: f64, 
             ratios.push(expected);
         }
         for yardstick in &found.yardsticks {
-            let pieces = pieces(years[0], yardstick.years);
+            let pieces = pieces(&years[0], yardstick.years);
             assert!(yardstick.periods == pieces.len() && holds_spread(yardstick.spread, &pieces), "{name}");
             let at = yardstick.levels.iter().find(|at| at.level_c == of.level_c).expect("every level");
             if let Some(expected) = ratio(shift, &pieces) {
@@ -160,7 +160,7 @@ fn check(found: &MeasureFindings, years: &[ArrayView2<'_, f64>], area_km2: f64, 
     if ratios.len() == levels_c.len() - 1 && ratios.iter().all(|ratio| (ratio - 1.0).abs() > 1e-5) {
         match (found.outweighs, first_crossing(levels_c, &ratios)) {
             (Crossing::At { level_c, .. }, Some(expected)) => {
-                assert!((level_c - expected).abs() < 1e-5, "{name}")
+                assert!((level_c - expected).abs() < 1e-5, "{name}");
             }
             (Crossing::NotReached { .. }, None) => assert!(levels_c.len() > 1, "{name}"),
             (Crossing::Unknown, None) => assert_eq!(levels_c.len(), 1, "{name}"),
