@@ -10,7 +10,7 @@ use super::runs;
 use crate::ensemble::RecordYear;
 use crate::fault::Fault;
 use crate::figures::{FIGURES, Setting, of_sites};
-use crate::findings::{BandFindings, Findings};
+use crate::findings::{BandFindings, Findings, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS};
 use crate::report::numbers::counted;
 use crate::report::{
     Answer, Reader, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html, manifest_json,
@@ -185,12 +185,16 @@ fn target(ready: &Ready, shared: &Shared) -> Result<PathBuf, Failure> {
     }
 }
 
-/// Refuses a study whose results would not fit: single years of the basin, period values of the bands.
+/// Refuses a study whose results would not fit: single years of the basin, period values of the bands, single years of the
+/// resampled records.
 fn check_size(ready: &Ready, measures: usize, shared: &Shared) -> Result<(), Failure> {
     let realizations = &ready.scenario.realizations;
     let kept_of_each = realizations.years + ready.basin.bands.len();
     let levels = ready.scenario.warming.levels_c.len();
-    let bytes = f64::from(realizations.count) * (kept_of_each * levels * measures) as f64 * 8.0;
+    let of_records = realizations.count.min(REALIZATIONS_OF_A_RECORD) * RESAMPLED_RECORDS;
+    let of_records = f64::from(of_records) * realizations.years as f64;
+    let kept = f64::from(realizations.count) * kept_of_each as f64 + of_records;
+    let bytes = kept * (levels * measures) as f64 * 8.0;
     if bytes <= MOST_KEPT_BYTES {
         return Ok(());
     }

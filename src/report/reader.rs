@@ -142,7 +142,7 @@ impl Reader {
     }
 
     /// A change of a measure of that kind, with its error where there is one: `−112 ± 2.7`, in the unit of the measure's
-    /// value beside which it stands; `−6.5 points`, `+1.2 days`, `−12 ± 0.4 d`.
+    /// value beside which it stands; `−6.5 points`, `+1.2 days`, `−12 ± 0.44 d`.
     pub fn change_of(self, kind: Kind, change: f64, error: Option<f64>) -> String {
         let unit = |number: f64| match kind {
             Kind::AmountMm => self.units.depth().of(number),
@@ -230,7 +230,7 @@ mod tests {
         assert_eq!(metric.change_of(Kind::DayCount, 0.5, None), "+0.5 days");
         assert_eq!([-112.0, 12.0].map(|mm| metric.change_of(Kind::AmountMm, mm, None)), ["−112", "+12"]);
         assert_eq!(metric.change_of(Kind::ArrivalDay, -11.6, None), "−12 d");
-        assert_eq!(metric.change_of(Kind::ArrivalDay, -11.6, Some(0.44)), "−12 ± 0.4 d");
+        assert_eq!(metric.change_of(Kind::ArrivalDay, -11.6, Some(0.44)), "−12 ± 0.44 d");
         assert_eq!(metric.change_of(Kind::AmountMm, -112.0, Some(2.7)), "−112 ± 2.7");
     }
 

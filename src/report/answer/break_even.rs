@@ -21,7 +21,7 @@ pub(super) fn break_even(findings: &Findings, headline: &MeasureFindings, reader
     let reached = &found.reached;
     let record = match reached.record_wettest_pct {
         Some(pct) => format!(
-            "the wettest {} years in order of the record brought {} % against its mean",
+            "the wettest run of {} usable years in the record brought {} % against its mean",
             reached.years,
             signed(pct, 0)
         ),
