@@ -19,7 +19,8 @@ use crate::weather::Series;
 /// Makes realizations: whole water years of station weather, one stream of random numbers each.
 pub trait Generator: Sync {
     /// Fills `into` with realization number `realization`, the same for every warming level. Its values depend on the
-    /// seed and that number alone.
+    /// seed and that number alone. Years of one name have the same weather throughout a realization, so that one that is
+    /// drawn twice need not be run twice.
     fn fill(&self, realization: u32, into: &mut Series);
 
     /// Whether years of one name have the same weather in every realization, so that what has been run need not be run
