@@ -48,7 +48,7 @@ impl<'p> Workshop<'p> {
     /// Runs a realization from bare ground, and measures every column, bands and basin means.
     pub fn run(&mut self, number: u32, tally: &Tally, watch: &dyn Watch) -> Result<Kept, Halt> {
         let plan = self.plan;
-        self.forget(plan.generator.repeats_years());
+        self.forget(plan.generator.drawn(number).is_some());
         self.run_years(number, plan.generator, watch, |block, _| Remembered {
             is_perennial: plan.keeps_snow(block),
             swe_bins: tally.bins(block),
@@ -67,7 +67,7 @@ impl<'p> Workshop<'p> {
         watch: &dyn Watch,
     ) -> Result<Vec<BasinKept>, Halt> {
         let plan = self.plan;
-        self.forget(generators.iter().all(|generator| generator.repeats_years()));
+        self.forget(generators.iter().all(|generator| generator.drawn(number).is_some()));
         let of = |generator: &&dyn Generator| {
             self.run_years(number, *generator, watch, |block, means| {
                 block.copy_means(means);
@@ -100,11 +100,18 @@ impl<'p> Workshop<'p> {
         measure: impl Fn(&mut YearBlock, &mut YearBlock) -> Remembered,
     ) -> Result<(), Halt> {
         let Self { engine, weather, means, memory, years, .. } = self;
-        generator.fill(number, weather);
+        let drawn = generator.drawn(number);
+        let (weather, spans) = match &drawn {
+            Some((record, spans)) => (*record, spans.as_slice()),
+            None => {
+                generator.fill(number, weather);
+                (&*weather, weather.years.as_slice())
+            }
+        };
         engine.restart();
         years.clear();
         let mut snow = memory.snow_at(engine.snow());
-        for span in &weather.years {
+        for span in spans {
             if watch.wants_stop() {
                 return Err(Halt::Stopped);
             }
