@@ -5,6 +5,7 @@ use crate::baseline::Seasons as SeasonsOf;
 use crate::ensemble::{BasinSeasons, Halt, Plan, Watch, run_records};
 use crate::findings::{BreakEven, BreakEvenLevel, Reached, break_even_pct, quantile, sorted};
 use crate::perturb::{Generator, MonthlyChange, YearBlocks};
+use crate::season::Measures;
 use crate::weather::Series;
 
 /// Realizations that are run for it at most, the first of the study.
@@ -24,7 +25,9 @@ pub(super) fn break_even(
 ) -> Result<BreakEven, Halt> {
     let all = plan.realizations;
     let unchanged = YearBlocks { mean_change_sd_pct: 0.0, ..generator };
-    let plan = Plan { realizations: plan.realizations.min(BREAK_EVEN_REALIZATIONS), ..*plan };
+    let realizations = plan.realizations.min(BREAK_EVEN_REALIZATIONS);
+    let measures = Measures::of_snow(plan.measures.settings().clone(), ready.basin.area_km2());
+    let plan = Plan { realizations, measures: &measures, ..*plan };
     let medians = |pct: &[f64]| {
         let mut scaled: Vec<MonthlyChange> =
             changes.iter().zip(pct).map(|(change, pct)| change.with_precipitation(*pct)).collect();
@@ -39,9 +42,12 @@ pub(super) fn break_even(
         };
         Ok::<_, Halt>((0..changes.len()).map(of).collect::<Vec<f64>>())
     };
-    let reference_median = medians(&vec![0.0; changes.len()])?[plan.reference];
+    let no_change = vec![0.0; changes.len()];
+    let unchanged_medians = medians(&no_change)?;
+    let reference_median = unchanged_medians[plan.reference];
     let roots = break_even_pct(changes.len(), |pct| {
-        Ok::<_, Halt>(medians(pct)?.into_iter().map(|median| median - reference_median).collect())
+        let medians = if pct == no_change { unchanged_medians.clone() } else { medians(pct)? };
+        Ok::<_, Halt>(medians.into_iter().map(|median| median - reference_median).collect())
     })?;
     let survey = ready.scenario.season.survey_dates[0];
     let wetness = Wetness::of(&generator, all, survey, watch)?;

@@ -1,7 +1,7 @@
 //! The plan of a run: what is stepped, by which weather, and what is measured.
 
 use crate::perturb::Generator;
-use crate::season::{Measures, keeps_snow};
+use crate::season::{Measures, NONE, keeps_snow};
 use crate::snow::{Lanes, Path, YearBlock};
 
 /// What is to be run.
@@ -29,5 +29,12 @@ impl Plan<'_> {
     /// Whether a band of the reference kept its snow through a year.
     pub(super) fn keeps_snow(&self, block: &YearBlock) -> bool {
         (0..self.bands).any(|band| keeps_snow(block, self.lanes.column(self.reference, band)))
+    }
+
+    /// Every measure of every column of a year, `[measure][column]`.
+    pub(super) fn measured(&self, block: &mut YearBlock) -> Vec<f64> {
+        let mut measured = vec![NONE; self.measures.list().len() * block.width];
+        self.measures.take(block, &mut measured);
+        measured
     }
 }

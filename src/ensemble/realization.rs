@@ -1,6 +1,6 @@
 //! One realization under every level: its years are run once and measured, for basin and bands or for the basin alone.
 
-use super::memory::{Memory, Remembered};
+use super::memory::{Memory, Remembered, SnowAt};
 use super::plan::Plan;
 use super::swe_days::Tally;
 use super::watch::{Halt, Watch};
@@ -21,23 +21,16 @@ pub(super) struct Kept {
     pub band_undefined: Vec<[u32; 2]>,
 }
 
-/// What a thread reuses from one realization to the next: one buffer of weather, one engine, one narrow block.
+/// What a thread reuses from one realization to the next: one buffer of weather, one engine, one narrow block, and the
+/// years that it has run.
 pub(super) struct Workshop<'p> {
     plan: &'p Plan<'p>,
     engine: Engine<'p>,
     weather: Series,
     means: YearBlock,
-    measured: Measured,
     memory: Memory,
-}
-
-/// Measured years, `[year][measure][column]`.
-#[derive(Default)]
-struct Measured {
-    values: Vec<f64>,
-    measures: usize,
-    columns: usize,
-    years: usize,
+    /// The realization's years, as places in the memory.
+    years: Vec<usize>,
 }
 
 impl<'p> Workshop<'p> {
@@ -47,30 +40,21 @@ impl<'p> Workshop<'p> {
             engine: Engine::on_path(plan.lanes, false, plan.path),
             weather: Series::default(),
             means: YearBlock::of_means(plan.lanes),
-            measured: Measured::default(),
             memory: Memory::default(),
+            years: Vec::new(),
         }
     }
 
-    /// Runs a realization from bare ground, and measures every column, bands and basin means. Where its first year leaves
-    /// perennial snow in a band of the reference, that year is run once more on the snow it left.
+    /// Runs a realization from bare ground, and measures every column, bands and basin means.
     pub fn run(&mut self, number: u32, tally: &Tally, watch: &dyn Watch) -> Result<Kept, Halt> {
-        let Self { plan, engine, weather, measured, .. } = self;
-        plan.generator.fill(number, weather);
-        engine.restart();
-        measured.begin(plan.measures.list().len(), weather.years.len());
-        for (year, span) in weather.years.iter().enumerate() {
-            if watch.wants_stop() {
-                return Err(Halt::Stopped);
-            }
-            let view = weather.view(span);
-            let mut block = engine.year(view)?;
-            if year == 0 && plan.keeps_snow(block) {
-                block = engine.year(view)?;
-            }
-            tally.count(block);
-            plan.measures.take(block, measured.year(year, block.width));
-        }
+        let plan = self.plan;
+        self.forget(plan.generator.drawn(number).is_some());
+        self.run_years(number, plan.generator, watch, |block, _| Remembered {
+            is_perennial: plan.keeps_snow(block),
+            swe_bins: tally.bins(block),
+            measured: plan.measured(block),
+        })?;
+        tally.count(self.years.iter().map(|place| self.memory.year(*place).swe_bins.as_slice()));
         Ok(self.keep())
     }
 
@@ -82,55 +66,78 @@ impl<'p> Workshop<'p> {
         generators: &[&dyn Generator],
         watch: &dyn Watch,
     ) -> Result<Vec<BasinKept>, Halt> {
-        if !generators.iter().all(|generator| generator.repeats_years()) {
-            self.memory.clear();
-        }
-        generators.iter().map(|generator| self.run_remembering(number, *generator, watch)).collect()
+        let plan = self.plan;
+        self.forget(generators.iter().all(|generator| generator.drawn(number).is_some()));
+        let of = |generator: &&dyn Generator| {
+            self.run_years(number, *generator, watch, |block, means| {
+                block.copy_means(means);
+                Remembered {
+                    is_perennial: plan.keeps_snow(block),
+                    swe_bins: Vec::new(),
+                    measured: plan.measured(means),
+                }
+            })?;
+            Ok(self.keep_basin(0))
+        };
+        generators.iter().map(of).collect()
     }
 
-    fn run_remembering(
+    /// Forgets the years that have been run, unless they come again and there is room for more.
+    fn forget(&mut self, repeats_years: bool) {
+        if !repeats_years || self.memory.is_full() {
+            self.memory.clear();
+        }
+    }
+
+    /// Runs a realization from bare ground; `measure` looks at each year that has not been run before, and may use the
+    /// narrow block. Where the first year leaves perennial snow in a band of the reference, that year is run once more on
+    /// the snow it left.
+    fn run_years(
         &mut self,
         number: u32,
         generator: &dyn Generator,
         watch: &dyn Watch,
-    ) -> Result<BasinKept, Halt> {
-        let Self { plan, engine, weather, means, measured, memory } = self;
-        generator.fill(number, weather);
+        measure: impl Fn(&mut YearBlock, &mut YearBlock) -> Remembered,
+    ) -> Result<(), Halt> {
+        let Self { engine, weather, means, memory, years, .. } = self;
+        let drawn = generator.drawn(number);
+        let (weather, spans) = match &drawn {
+            Some((record, spans)) => (*record, spans.as_slice()),
+            None => {
+                generator.fill(number, weather);
+                (&*weather, weather.years.as_slice())
+            }
+        };
         engine.restart();
-        measured.begin(plan.measures.list().len(), weather.years.len());
-        for (year, span) in weather.years.iter().enumerate() {
+        years.clear();
+        let mut snow = memory.snow_at(engine.snow());
+        for span in spans {
             if watch.wants_stop() {
                 return Err(Halt::Stopped);
             }
-            let mut run = |engine: &mut Engine<'_>| {
-                let start = engine.snow();
-                let found = memory.year(span.water_year, start, || {
-                    let block = engine.year(weather.view(span))?;
-                    let is_perennial = plan.keeps_snow(block);
-                    block.copy_means(means);
-                    let mut measured = vec![0.0; plan.measures.list().len() * means.width];
-                    plan.measures.take(means, &mut measured);
-                    Ok::<_, Halt>(Remembered { measured, end: engine.snow(), is_perennial })
-                })?;
-                engine.put_snow(&found.end);
-                measured
-                    .year(year, found.measured.len() / plan.measures.list().len())
-                    .copy_from_slice(&found.measured);
-                Ok::<bool, Halt>(found.is_perennial)
+            let mut run = |memory: &mut Memory, start: SnowAt| {
+                memory.place(span.water_year, start, |snow| {
+                    engine.put_snow(snow);
+                    let year = measure(engine.year(weather.view(span))?, means);
+                    Ok::<_, Halt>((year, engine.snow()))
+                })
             };
-            if run(engine)? && year == 0 {
-                run(engine)?;
+            let (mut place, mut end) = run(memory, snow)?;
+            if years.is_empty() && memory.year(place).is_perennial {
+                (place, end) = run(memory, end)?;
             }
+            years.push(place);
+            snow = end;
         }
-        Ok(self.keep_basin(0))
+        Ok(())
     }
 
     fn keep_basin(&self, first_mean: usize) -> BasinKept {
-        let (levels, measured) = (self.plan.levels, &self.measured);
-        let mut kept = Vec::with_capacity(levels * measured.measures * measured.years);
+        let (levels, measures) = (self.plan.levels, self.plan.measures.list().len());
+        let mut kept = Vec::with_capacity(levels * measures * self.years.len());
         for level in 0..levels {
-            for measure in 0..measured.measures {
-                kept.extend(measured.column(measure, first_mean + level));
+            for measure in 0..measures {
+                kept.extend(self.column(measure, first_mean + level));
             }
         }
         BasinKept(kept)
@@ -143,12 +150,12 @@ impl<'p> Workshop<'p> {
             band_periods: Vec::with_capacity(levels * bands * measures.len()),
             band_undefined: Vec::with_capacity(levels * bands * measures.len()),
         };
-        let mut one = Vec::with_capacity(self.measured.years);
+        let mut one = Vec::with_capacity(self.years.len());
         for level in 0..levels {
             for band in 0..bands {
                 for (number, measure) in measures.iter().enumerate() {
                     one.clear();
-                    one.extend(self.measured.column(number, self.plan.lanes.column(level, band)));
+                    one.extend(self.column(number, self.plan.lanes.column(level, band)));
                     let count = |what: f64| one.iter().filter(|value| **value == what).count() as u32;
                     kept.band_undefined.push([count(NONE), count(NOT_GONE)]);
                     kept.band_periods.push(period_value(measure.kind, &mut one));
@@ -157,24 +164,13 @@ impl<'p> Workshop<'p> {
         }
         kept
     }
-}
-
-impl Measured {
-    fn begin(&mut self, measures: usize, years: usize) {
-        (self.measures, self.years) = (measures, years);
-    }
-
-    /// The place of a year's measures.
-    fn year(&mut self, year: usize, columns: usize) -> &mut [f64] {
-        self.columns = columns;
-        let size = self.measures * columns;
-        self.values.resize(self.years * size, NONE);
-        &mut self.values[year * size..(year + 1) * size]
-    }
 
     /// A measure of a column, year by year.
     fn column(&self, measure: usize, column: usize) -> impl Iterator<Item = f64> {
-        let at = move |year: usize| (year * self.measures + measure) * self.columns + column;
-        (0..self.years).map(move |year| self.values[at(year)])
+        let measures = self.plan.measures.list().len();
+        self.years.iter().map(move |place| {
+            let measured = &self.memory.year(*place).measured;
+            measured[measured.len() / measures * measure + column]
+        })
     }
 }

@@ -6,7 +6,7 @@
 use crate::snow::{Engine, Lanes, OpenLedger, YearBlock};
 use crate::weather::Series;
 use ndarray::{Array3, ArrayView1, Axis};
-use std::sync::atomic::{AtomicU32, Ordering};
+use std::sync::{Mutex, MutexGuard, PoisonError};
 
 /// Days of a water year that are counted: the 366th comes in leap years alone.
 pub const COUNTED_DAYS: usize = 365;
@@ -55,37 +55,55 @@ impl SweBins {
     }
 }
 
-/// The counts while they are taken, by all threads at once.
+/// The counts while they are taken. A realization is counted into a table that no other thread has, so that none waits for
+/// another; there are as many as were counted at one time, and they add up to the same whoever counted what.
 pub(super) struct Tally {
     bins: SweBins,
     levels: usize,
-    /// `[level][day][bin]`.
-    counts: Vec<AtomicU32>,
+    /// Tables that no thread has, each `[level][day][bin]`.
+    tables: Mutex<Vec<Vec<u32>>>,
 }
 
 impl Tally {
     pub fn new(bins: SweBins, levels: usize) -> Self {
-        let size = levels * COUNTED_DAYS * bins.count;
-        Self { bins, levels, counts: std::iter::repeat_with(AtomicU32::default).take(size).collect() }
+        Self { bins, levels, tables: Mutex::default() }
     }
 
-    /// Counts S(d) of every day of a year for the basin mean of each level.
-    pub fn count(&self, block: &YearBlock) {
-        for day in 0..block.days.min(COUNTED_DAYS) {
-            let means = &block.row(&block.swe_mm, day)[block.mixes_at..];
-            for (level, swe_mm) in means.iter().take(self.levels).enumerate() {
-                let at = (level * COUNTED_DAYS + day) * self.bins.count + self.bins.bin(*swe_mm);
-                self.counts[at].fetch_add(1, Ordering::Relaxed);
+    /// The bin of S(d) of every counted day of a year for the basin mean of each level, `[level][day]`.
+    pub fn bins(&self, block: &YearBlock) -> Vec<u32> {
+        let bin = |level: usize, day: usize| {
+            self.bins.bin(block.swe_mm[day * block.width + block.mixes_at + level]) as u32
+        };
+        (0..self.levels).flat_map(|level| (0..COUNTED_DAYS).map(move |day| bin(level, day))).collect()
+    }
+
+    /// Counts a realization's years, each the bins of its days.
+    pub fn count<'y>(&self, years: impl Iterator<Item = &'y [u32]>) {
+        let mut table = self.tables().pop().unwrap_or_else(|| vec![0; self.size()]);
+        for year in years {
+            for (day, bin) in table.chunks_exact_mut(self.bins.count).zip(year) {
+                day[*bin as usize] += 1;
             }
         }
+        self.tables().push(table);
     }
 
     pub fn finish(self) -> SweDays {
-        let counts = self.counts.into_iter().map(AtomicU32::into_inner);
         let shape = (self.levels, COUNTED_DAYS, self.bins.count);
         let mut days = SweDays { bins: self.bins, counts: Array3::zeros(shape) };
-        days.counts.iter_mut().zip(counts).for_each(|(place, count)| *place = count);
+        for table in self.tables().iter() {
+            days.counts.iter_mut().zip(table).for_each(|(sum, count)| *sum += count);
+        }
         days
+    }
+
+    fn size(&self) -> usize {
+        self.levels * COUNTED_DAYS * self.bins.count
+    }
+
+    /// The free tables. They are whole whenever the lock is free, even if a thread that held it has panicked.
+    fn tables(&self) -> MutexGuard<'_, Vec<Vec<u32>>> {
+        self.tables.lock().unwrap_or_else(PoisonError::into_inner)
     }
 }
 

@@ -8,6 +8,10 @@ pub const BREAK_EVEN_BRACKET_PCT: [f64; 2] = [-50.0, 100.0];
 const SCAN_PCT: f64 = 10.0;
 /// A root is known to this, percent.
 const PRECISION_PCT: f64 = 0.01;
+/// How far a look is moved towards the middle of its bracket, per square of the bracket's width in percent.
+const TOWARDS_MIDDLE_PER_PCT: f64 = 0.003;
+/// How far at the least, so that the last two looks, one from either side, leave a bracket that is narrow enough, percent.
+const LEAST_TOWARDS_MIDDLE_PCT: f64 = 0.3 * PRECISION_PCT;
 
 /// Break-even precipitation of the headline measure.
 #[derive(Debug, Clone, PartialEq, Serialize)]
@@ -52,9 +56,10 @@ pub struct Reached {
 
 /// For each level the root nearest 0 of `excess`: the median at a change of precipitation less the reference's median.
 ///
-/// `excess` takes a change for each level, percent, and gives the excess of each; it is called some 30 times. The bracket
-/// of -50 to +100 % is scanned in steps of 10, and the sign change nearest 0 is halved until it is known to 0.01 %. Of two
-/// roots within one step none is found. An excess of exactly 0 is a root; a level without an excess has none.
+/// `excess` takes a change for each level, percent, and gives the excess of each; it is called some 10 times, and 30 at
+/// most. The bracket of -50 to +100 % is scanned in steps of 10 from 0 outwards, until every level has changed its sign or
+/// nothing is left; the sign change nearest 0 is narrowed to 0.01 %. Of two roots within one step none is found. An
+/// excess of exactly 0 is a root; a level without an excess has none.
 ///
 /// # Errors
 /// Those of `excess`.
@@ -62,43 +67,64 @@ pub fn break_even_pct<E>(
     levels: usize,
     mut excess: impl FnMut(&[f64]) -> Result<Vec<f64>, E>,
 ) -> Result<Vec<Option<f64>>, E> {
-    let steps = ((BREAK_EVEN_BRACKET_PCT[1] - BREAK_EVEN_BRACKET_PCT[0]) / SCAN_PCT) as usize;
-    let scanned: Vec<f64> =
-        (0..=steps).map(|step| BREAK_EVEN_BRACKET_PCT[0] + SCAN_PCT * step as f64).collect();
-    let found = scanned.iter().map(|pct| excess(&vec![*pct; levels])).collect::<Result<Vec<_>, E>>()?;
-    let mut brackets: Vec<Option<Bracket>> = (0..levels)
-        .map(|level| {
-            let ends = scanned.windows(2).zip(found.windows(2));
-            let brackets = ends.filter_map(|(pct, excess)| {
-                Bracket::new([pct[0], pct[1]], [excess[0][level], excess[1][level]])
-            });
-            brackets.min_by(|a, b| a.distance().total_cmp(&b.distance()))
-        })
-        .collect();
-    while brackets.iter().flatten().any(|bracket| bracket.width() > PRECISION_PCT) {
-        let middles: Vec<f64> = brackets.iter().map(|of| of.map_or(0.0, |of| of.middle())).collect();
-        for (bracket, excess) in brackets.iter_mut().zip(excess(&middles)?) {
-            *bracket = bracket.map(|of| of.halved(excess));
+    let mut brackets = scan(levels, &mut excess)?;
+    let is_open =
+        |brackets: &[Option<Bracket>]| brackets.iter().flatten().any(|of| of.width() > PRECISION_PCT);
+    let mut taken = 0;
+    while is_open(&brackets) {
+        let tried: Vec<f64> = brackets.iter().map(|of| of.map_or(0.0, |of| of.next(taken))).collect();
+        for ((bracket, pct), excess) in brackets.iter_mut().zip(&tried).zip(excess(&tried)?) {
+            *bracket = bracket.map(|of| of.narrowed(*pct, excess));
         }
+        taken += 1;
     }
     Ok(brackets.into_iter().map(|bracket| bracket.map(|of| of.middle())).collect())
 }
 
-/// Two changes between which the excess changes its sign.
+/// The sign change nearest 0 of each level, between two steps of the scan.
+fn scan<E>(
+    levels: usize,
+    mut excess: impl FnMut(&[f64]) -> Result<Vec<f64>, E>,
+) -> Result<Vec<Option<Bracket>>, E> {
+    let [least, most] = BREAK_EVEN_BRACKET_PCT;
+    let mut scanned: Vec<(f64, Vec<f64>)> = Vec::new();
+    let mut nearest = vec![None; levels];
+    let mut distance = 0.0;
+    while distance <= most.max(-least) && nearest.iter().any(Option::is_none) {
+        for pct in [distance, -distance] {
+            let is_new = scanned.iter().all(|(scanned, _)| *scanned != pct);
+            if is_new && (least..=most).contains(&pct) {
+                scanned.push((pct, excess(&vec![pct; levels])?));
+            }
+        }
+        scanned.sort_by(|a, b| a.0.total_cmp(&b.0));
+        for (level, nearest) in nearest.iter_mut().enumerate() {
+            let ends = scanned.windows(2);
+            let brackets = ends.filter_map(|ends| {
+                Bracket::new([ends[0].0, ends[1].0], [ends[0].1[level], ends[1].1[level]])
+            });
+            *nearest = brackets.min_by(|a, b| a.distance().total_cmp(&b.distance()));
+        }
+        distance += SCAN_PCT;
+    }
+    Ok(nearest)
+}
+
+/// Two changes between which the excess changes its sign, and the excess there.
 #[derive(Debug, Clone, Copy)]
 struct Bracket {
     pct: [f64; 2],
-    is_below: [bool; 2],
+    excess: [f64; 2],
 }
 
 impl Bracket {
     fn new(pct: [f64; 2], excess: [f64; 2]) -> Option<Self> {
         if let Some(root) = (0..2).find(|end| excess[*end] == 0.0) {
-            return Some(Self { pct: [pct[root]; 2], is_below: [true, false] });
+            return Some(Self { pct: [pct[root]; 2], excess });
         }
-        let is_below = excess.map(|excess| excess < 0.0);
-        let has_root = excess.iter().all(|excess| excess.is_finite()) && is_below[0] != is_below[1];
-        has_root.then_some(Self { pct, is_below })
+        let has_root =
+            excess.iter().all(|excess| excess.is_finite()) && (excess[0] < 0.0) != (excess[1] < 0.0);
+        has_root.then_some(Self { pct, excess })
     }
 
     fn width(&self) -> f64 {
@@ -114,13 +140,28 @@ impl Bracket {
         if self.pct[0] < 0.0 && self.pct[1] > 0.0 { 0.0 } else { self.pct[0].abs().min(self.pct[1].abs()) }
     }
 
-    fn halved(self, excess: f64) -> Self {
-        let middle = self.middle();
-        if (excess < 0.0) == self.is_below[0] {
-            Self { pct: [middle, self.pct[1]], ..self }
-        } else {
-            Self { pct: [self.pct[0], middle], ..self }
+    /// Where to look next, after so many looks: by the ITP method of Oliveira & Takahashi (2021, ACM TOMS 47:5), where the
+    /// line between the ends is 0, moved a little towards the middle so that the bracket closes from both sides, and
+    /// never so far from the middle that it takes more than one look more than halving.
+    fn next(&self, taken: i32) -> f64 {
+        let (middle, width) = (self.middle(), self.width());
+        let on_line = self.pct[0] + width * self.excess[0] / (self.excess[0] - self.excess[1]);
+        let off_middle = on_line - middle;
+        if width <= PRECISION_PCT || !off_middle.is_finite() {
+            return middle;
         }
+        let towards_middle = TOWARDS_MIDDLE_PER_PCT * width * width + LEAST_TOWARDS_MIDDLE_PCT;
+        let moved = (off_middle.abs() - towards_middle).max(0.0);
+        let halvings = libm::ceil(libm::log2(SCAN_PCT / PRECISION_PCT)) + 1.0 - f64::from(taken);
+        let farthest = (PRECISION_PCT * libm::exp2(halvings) - width).max(0.0) / 2.0;
+        middle + moved.min(farthest).copysign(off_middle)
+    }
+
+    fn narrowed(self, pct: f64, excess: f64) -> Self {
+        let end = usize::from((excess < 0.0) != (self.excess[0] < 0.0));
+        let mut narrowed = self;
+        (narrowed.pct[end], narrowed.excess[end]) = (pct, excess);
+        narrowed
     }
 }
 

@@ -4,7 +4,7 @@
 use super::Generator;
 use super::mean_change::mean_change_factor;
 use super::stream::{record_stream, stream};
-use crate::weather::Series;
+use crate::weather::{Series, YearSpan};
 use rand::{Rng, RngExt};
 use rand_distr::{Distribution, StandardNormal};
 
@@ -39,8 +39,15 @@ impl Generator for YearBlocks<'_> {
     }
 
     /// Where no change of mean precipitation is assumed, years are the record's own.
-    fn repeats_years(&self) -> bool {
-        self.mean_change_sd_pct == 0.0
+    fn drawn(&self, realization: u32) -> Option<(&Series, Vec<YearSpan>)> {
+        if self.mean_change_sd_pct != 0.0 {
+            return None;
+        }
+        let mut random = stream(self.seed, realization);
+        let _unused_draw: f64 = StandardNormal.sample(&mut random);
+        let mut years = Vec::with_capacity(self.years);
+        self.draw_years(&mut random, self.years, |year, _| years.push(self.record.years[year]));
+        Some((self.record, years))
     }
 }
 

@@ -73,6 +73,10 @@ pub(super) fn take(block: &mut YearBlock, peaks: &Peaks, asked: &Asked, into: &m
 /// Whether a column's snow stays through the year's end: it never melts out after its peak.
 pub fn keeps_snow(block: &YearBlock, column: usize) -> bool {
     let swe = |day: usize| block.swe_mm[day * block.width + column];
+    // Most columns have none on the last day; then the peak need not be looked for.
+    if swe(block.days - 1) < BARE_MM {
+        return false;
+    }
     let mut peak_day = 0;
     for day in 1..block.days {
         if swe(day) > swe(peak_day) + SAME_SWE_MM {

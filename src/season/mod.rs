@@ -82,8 +82,8 @@ struct Family {
     take: fn(&mut YearBlock, &Peaks, &Asked, &mut [f64]),
 }
 
-/// Every family. Those that only read come before `melt`, which accumulates the block's net melt in place.
-const FAMILIES: &[Family] = &[
+/// Every family, that of the snow that lies first. Those that only read come before `melt`, which accumulates the block's net melt in place.
+static FAMILIES: &[Family] = &[
     Family { list: state::list, take: state::take },
     Family { list: outflow::list, take: outflow::take },
     Family { list: arrival::list, take: arrival::take },
@@ -108,18 +108,27 @@ struct Peaks {
 pub struct Measures {
     asked: Asked,
     list: Vec<Measure>,
-    /// How many measures each family has.
-    counts: Vec<usize>,
+    /// The families that are taken, each with how many measures it has.
+    families: Vec<(&'static Family, usize)>,
 }
 
 impl Measures {
     /// Every measure that the settings ask for, of a basin of so many km2.
     pub fn new(settings: SeasonSettings, basin_area_km2: f64) -> Self {
-        let lists: Vec<Vec<Measure>> = FAMILIES.iter().map(|family| (family.list)(&settings)).collect();
-        let counts = lists.iter().map(Vec::len).collect();
+        Self::of_families(FAMILIES, settings, basin_area_km2)
+    }
+
+    /// The snow that lies alone, whose first measure is the headline's: for runs that are asked for nothing else.
+    pub fn of_snow(settings: SeasonSettings, basin_area_km2: f64) -> Self {
+        Self::of_families(&FAMILIES[..1], settings, basin_area_km2)
+    }
+
+    fn of_families(families: &'static [Family], settings: SeasonSettings, basin_area_km2: f64) -> Self {
+        let lists: Vec<Vec<Measure>> = families.iter().map(|family| (family.list)(&settings)).collect();
+        let families = families.iter().zip(lists.iter().map(Vec::len)).collect();
         // 1 hm3 over 1 km2 is 1 m of water.
         let arrival_mm = settings.arrival_volume_hm3.map(|volume_hm3| 1000.0 * volume_hm3 / basin_area_km2);
-        Self { asked: Asked { settings, arrival_mm }, list: lists.into_iter().flatten().collect(), counts }
+        Self { asked: Asked { settings, arrival_mm }, list: lists.into_iter().flatten().collect(), families }
     }
 
     /// The measures, in the order in which they are taken.
@@ -140,7 +149,7 @@ impl Measures {
         let mut peaks = Peaks { swe_mm: vec![0.0; width], day: vec![1.0; width] };
         rows::highest(&block.swe_mm[..block.days * width], &mut peaks.swe_mm, &mut peaks.day);
         let mut rest = into;
-        for (family, count) in FAMILIES.iter().zip(&self.counts) {
+        for (family, count) in &self.families {
             let (part, after) = rest.split_at_mut(count * width);
             (family.take)(block, &peaks, &self.asked, part);
             rest = after;

@@ -90,11 +90,7 @@ pub(super) fn take(block: &mut YearBlock, peaks: &Peaks, asked: &Asked, into: &m
     }
 
     let (largest, centroid) = rest.split_at_mut(4 * width);
-    largest.fill(0.0);
-    let (one_day, three_days) = largest.split_at_mut(2 * width);
-    let ((one, one_input), (three, three_input)) =
-        (one_day.split_at_mut(width), three_days.split_at_mut(width));
-    rows::largest(outflow, bare_ground_rain, one, one_input, three, three_input);
+    rows::largest(outflow, bare_ground_rain, width, largest);
 
     let mut sum = vec![0.0; width];
     centroid.fill(0.0);

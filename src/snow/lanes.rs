@@ -68,8 +68,9 @@ impl Lanes {
         let mixes = groups.len();
         let places = groups.iter().map(Vec::len).max().unwrap_or(0);
         let mix_width = mixes.next_multiple_of(ROW_MULTIPLE);
-        // The lanes of the last place, too, are read as a padded row of mixes.
-        let width = (mixes * places.saturating_sub(1) + mix_width).next_multiple_of(ROW_MULTIPLE);
+        // The lanes of the last place, too, are read as a padded row of mixes; but a lone mean is summed by itself.
+        let last = if mixes == 1 { 1 } else { mix_width };
+        let width = (mixes * places.saturating_sub(1) + last).next_multiple_of(ROW_MULTIPLE);
         let mut lanes = Self {
             count: mixes * places,
             width,
@@ -120,9 +121,15 @@ impl Lanes {
 
     /// A basin mean of a row of lanes: the shares' sum, taken in the order of the group.
     pub fn mix(&self, mix: usize, row: &[f64]) -> f64 {
+        self.mix_from(0, mix, row)
+    }
+
+    /// The same, the places before `first_place` left out.
+    #[inline(always)]
+    fn mix_from(&self, first_place: usize, mix: usize, row: &[f64]) -> f64 {
         let shares = &self.shares[mix / ROW_MULTIPLE * self.places..][..self.places];
         let mut sum = 0.0;
-        for (place, shares) in shares.iter().enumerate() {
+        for (place, shares) in shares.iter().enumerate().skip(first_place) {
             sum += shares[mix % ROW_MULTIPLE] * row[self.column(mix, place)];
         }
         sum
@@ -133,6 +140,11 @@ impl Lanes {
     #[inline(always)]
     pub(super) fn mix_row(&self, row: &[f64], from: usize, means: &mut [f64]) {
         let first_place = from.checked_div(self.mixes).unwrap_or(0);
+        if self.mixes == 1 {
+            means.fill(0.0);
+            means[0] = self.mix_from(first_place, 0, row);
+            return;
+        }
         let (means, _) = means.as_chunks_mut::<ROW_MULTIPLE>();
         for (vector, means) in means.iter_mut().enumerate() {
             let shares = &self.shares[vector * self.places..][..self.places];
