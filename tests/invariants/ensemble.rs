@@ -78,6 +78,16 @@ impl Study {
     }
 }
 
+/// Another generator's realizations, no two years of one name: nothing of them can be remembered.
+struct EveryYearNew<'g>(&'g dyn Generator);
+
+impl Generator for EveryYearNew<'_> {
+    fn fill(&self, realization: u32, into: &mut Series) {
+        self.0.fill(realization, into);
+        into.years.iter_mut().zip(0..).for_each(|(year, name)| year.water_year = name);
+    }
+}
+
 fn bits<'a>(values: impl IntoIterator<Item = &'a f64>) -> Vec<u64> {
     values.into_iter().map(|value| value.to_bits()).collect()
 }
@@ -115,9 +125,25 @@ proptest! {
         let plan = study.plan(&own, 5, Path::Widest);
         let found = run_records(&plan, &each, &Silent).expect("a closed ledger");
         for (generator, found) in each.iter().zip(found) {
-            let alone: BasinSeasons = study.run_from(*generator, 2, 5, Path::Widest).basin;
+            let alone: BasinSeasons = study.run_from(&EveryYearNew(*generator), 2, 5, Path::Widest).basin;
             prop_assert_eq!(bits(&alone.years), bits(&found.years));
             prop_assert_eq!(bits(&alone.periods), bits(&found.periods));
+        }
+    }
+
+    /// A realization that draws years twice, with or without a change of mean precipitation or with temperatures held,
+    /// gives what it gives when every year is run: bands, basin and counted days.
+    #[test]
+    fn years_that_are_drawn_twice_are_the_same_years(mut scenario in scenarios(), mean_c in -25.0..15.0) {
+        scenario.climate.mean_c = mean_c;
+        let study = Study::of(&scenario, &scenario.changes());
+        let changed = YearBlocks { years: 9, ..study.generator(&study.record) };
+        let unchanged = YearBlocks { mean_change_sd_pct: 0.0, ..changed };
+        let held = TemperatureHeld::new(&changed, &study.record);
+        for generator in [&changed as &dyn Generator, &unchanged, &held] {
+            let found = study.run_from(generator, 2, 5, Path::Widest);
+            let every_year = study.run_from(&EveryYearNew(generator), 2, 5, Path::Widest);
+            prop_assert!(all_bits(&found) == all_bits(&every_year), "what is remembered differs");
         }
     }
 

@@ -47,6 +47,21 @@ fn order(series: &Series) -> Vec<i32> {
 proptest! {
     #![proptest_config(cases(64))]
 
+    /// Without a change of mean precipitation a realization is years of the record as they are, the same that it is filled
+    /// with; with one it is not.
+    #[test]
+    fn years_as_they_are(seed in any::<u64>(), number in any::<u32>()) {
+        let record = labelled_record(&[true; 12]);
+        let generator = blocks(&record, seed, 3.0, 0.0);
+        let (drawn_from, years) = generator.drawn(number).expect("the record's own years");
+        let mut drawn = Series::default();
+        for year in &years {
+            drawn.push_year(drawn_from, year, !drawn.years.is_empty());
+        }
+        prop_assert_eq!(drawn, filled(&generator, number));
+        prop_assert!(blocks(&record, seed, 3.0, 10.0).drawn(number).is_none());
+    }
+
     /// A realization is a function of seed and number: what was in the buffer and what was drawn before is forgotten.
     #[test]
     fn seed_and_number_alone(seed in any::<u64>(), number in any::<u32>(), others in any::<[u32; 3]>()) {
