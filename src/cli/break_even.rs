@@ -3,7 +3,7 @@
 use super::assemble::Ready;
 use crate::baseline::Seasons as SeasonsOf;
 use crate::ensemble::{BasinSeasons, Halt, Plan, Watch, run_records};
-use crate::findings::{BreakEven, BreakEvenLevel, Reached, break_even_pct, quantile, sorted};
+use crate::findings::{BreakEven, BreakEvenLevel, Reached, Root, break_even_pct, quantile, sorted};
 use crate::perturb::{Generator, MonthlyChange, YearBlocks};
 use crate::season::Measures;
 use crate::weather::Series;
@@ -56,13 +56,15 @@ pub(super) fn break_even(
     Ok(BreakEven {
         realizations: plan.realizations as usize,
         reference_median,
-        levels: levels.map(|(_, (level_c, pct))| wetness.level(*level_c, pct)).collect(),
+        levels: levels.map(|(_, (level_c, root))| wetness.level(*level_c, root)).collect(),
         reached: wetness.reached(generator.years),
     })
 }
 
-/// Mean cool-season precipitation of the record's and the realizations' periods, percent above the record's mean.
+/// Mean precipitation of the record's and the realizations' periods, percent above the record's mean: of the cool season,
+/// or of whole years where the first survey date leaves no season before it.
 struct Wetness {
+    is_of_whole_years: bool,
     realizations_pct: Vec<f64>,
     record_wettest_pct: Option<f64>,
 }
@@ -75,11 +77,14 @@ impl Wetness {
         watch: &dyn Watch,
     ) -> Result<Self, Halt> {
         let mean = |values: &[(i32, f64)]| values.iter().map(|(_, mm)| mm).sum::<f64>() / values.len() as f64;
-        let cool = |series: &Series| SeasonsOf::of(series, survey).cool.precipitation_mm;
-        let record = cool(generator.record);
+        let is_of_whole_years = SeasonsOf::of(generator.record, survey).cool.precipitation_mm.is_empty();
+        let of = |series: &Series| {
+            let seasons = SeasonsOf::of(series, survey);
+            if is_of_whole_years { seasons.warm.precipitation_mm } else { seasons.cool.precipitation_mm }
+        };
+        let record = of(generator.record);
         let record_mm = mean(&record);
         let above = |values: &[(i32, f64)]| 100.0 * (mean(values) / record_mm - 1.0);
-        let periods = record.windows(generator.years);
         let mut series = Series::default();
         let mut realizations_pct = Vec::with_capacity(realizations as usize);
         for number in 0..realizations {
@@ -87,16 +92,23 @@ impl Wetness {
                 return Err(Halt::Stopped);
             }
             generator.fill(number, &mut series);
-            realizations_pct.push(above(&cool(&series)));
+            realizations_pct.push(above(&of(&series)));
         }
-        Ok(Self { realizations_pct, record_wettest_pct: periods.map(above).max_by(f64::total_cmp) })
+        let record_wettest_pct = record.windows(generator.years).map(above).max_by(f64::total_cmp);
+        Ok(Self { is_of_whole_years, realizations_pct, record_wettest_pct })
     }
 
-    fn level(&self, level_c: f64, precipitation_change_pct: Option<f64>) -> BreakEvenLevel {
+    fn level(&self, level_c: f64, root: Root) -> BreakEvenLevel {
+        let (precipitation_change_pct, stays) = match root {
+            Root::At(pct) => (Some(pct), None),
+            Root::Stays(stays) => (None, Some(stays)),
+            Root::Unknown => (None, None),
+        };
         let reached = |pct: f64| self.realizations_pct.iter().filter(|wetness| **wetness >= pct).count();
         BreakEvenLevel {
             level_c,
             precipitation_change_pct,
+            stays,
             realizations_that_reached: precipitation_change_pct.map_or(0, reached),
             record_reached: self
                 .record_wettest_pct
@@ -107,6 +119,7 @@ impl Wetness {
     fn reached(&self, years: usize) -> Reached {
         Reached {
             years,
+            is_of_whole_years: self.is_of_whole_years,
             record_wettest_pct: self.record_wettest_pct,
             realizations_wettest_pct: self.realizations_pct.iter().copied().fold(f64::NEG_INFINITY, f64::max),
             realizations: self.realizations_pct.len(),

@@ -6,8 +6,8 @@ use super::failure::Failure;
 use super::progress::Progress;
 use crate::ensemble::{BasinSeasons, Halt, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
-    Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit, Runs,
-    TIMES_ASSUMED, answer,
+    Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, Refit, Runs, TIMES_ASSUMED, answer,
+    records_to_resample,
 };
 use crate::perturb::{Generator, TemperatureHeld, YearBlocks};
 use crate::season::Measures;
@@ -59,7 +59,8 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         let reference = run_records(&of_reference, &only, progress).map_err(halted)?;
         other_changes.extend(reference.map(|reference| OtherChange { times_assumed, reference }));
     }
-    let records: Vec<Series> = (0..RESAMPLED_RECORDS).map(|at| generator.resampled_record(at)).collect();
+    let records = records_to_resample(ready.drawn_from.years.len(), realizations.count);
+    let records: Vec<Series> = (0..records).map(|at| generator.resampled_record(at)).collect();
     let generators: Vec<YearBlocks<'_>> =
         records.iter().map(|record| YearBlocks { record, ..generator }).collect();
     let generators: Vec<&dyn Generator> = generators.iter().map(|of_record| of_record as _).collect();
@@ -68,7 +69,13 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let refit = |seasons: BasinSeasons| Refit::of(&seasons, &warming.levels_c, warming.reference);
     let refits: Vec<Refit> = of_records.map(refit).collect();
 
-    let break_even = break_even(ready, &plan, &changes, generator, &Quiet(progress)).map_err(halted)?;
+    // Only a warmer level has something to be made up for.
+    let break_even = if warming.reference + 1 < warming.levels_c.len() {
+        progress.stage("looking for the precipitation that would make up for the warming");
+        Some(break_even(ready, &plan, &changes, generator, &Quiet(progress)).map_err(halted)?)
+    } else {
+        None
+    };
 
     progress.stage("answering questions about them");
     let runs =
@@ -82,7 +89,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     };
     let findings = answer(&runs, &questions, progress).map_err(halted)?;
     let comparisons = ready.comparisons().map_err(open)?;
-    Ok(Findings { break_even: Some(break_even), comparisons, ..findings })
+    Ok(Findings { break_even, comparisons, ..findings })
 }
 
 /// Watches for the wish to stop alone: runs that are too many and too short to count on a bar.

@@ -107,7 +107,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
     };
     let of_basin = |at: usize| {
         let found = asked(&runs.of_basin(at, questions), &resamples)?;
-        Ok(runs.beside(at, found, questions, &few))
+        Ok(runs.beside(at, found, questions, &resamples))
     };
     let basin = (0..measures.len()).into_par_iter().map(of_basin).collect::<Result<Vec<_>, Halt>>()?;
     let of_bands: Vec<Asked<'_>> = (0..questions.bands.len())
@@ -181,13 +181,19 @@ impl Runs<'_> {
     }
 
     /// Adds what stands beside a basin measure's findings: its yardsticks, and what other records would have answered.
-    fn beside(&self, at: usize, found: Found, questions: &Questions<'_>, few: &Resamples) -> MeasureFindings {
+    fn beside(
+        &self,
+        at: usize,
+        found: Found,
+        questions: &Questions<'_>,
+        resamples: &Resamples,
+    ) -> MeasureFindings {
         let levels = Levels { levels_c: questions.levels_c, reference: questions.reference };
         let Found { findings, shifts } = found;
         let of = |years: ArrayView2<'_, f64>, times_assumed: f64| {
             let mean_change_sd_pct = questions.mean_change_sd_pct * times_assumed;
             let assumed = Assumed { years, mean_change_sd_pct, times_assumed };
-            yardsticks(findings.measure.kind, assumed, &shifts, levels, few)
+            yardsticks(findings.measure.kind, assumed, &shifts, levels, resamples)
         };
         let years = self.study.basin.years.index_axis(Axis(1), at);
         let mut all = of(years.index_axis_move(Axis(0), questions.reference), 1.0);

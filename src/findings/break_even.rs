@@ -34,6 +34,8 @@ pub struct BreakEvenLevel {
     /// The change of all precipitation at which the median is back at the reference's, percent; none within the bracket
     /// where nothing stands.
     pub precipitation_change_pct: Option<f64>,
+    /// Where there is none: on which side of the reference's median the level's stays, from -50 to +100 %.
+    pub stays: Option<Stays>,
     /// Realizations of the study whose mean cool-season precipitation reached it, by chance and by the assumed change of
     /// mean precipitation; 0 where there is no break-even.
     pub realizations_that_reached: usize,
@@ -41,11 +43,34 @@ pub struct BreakEvenLevel {
     pub record_reached: Option<bool>,
 }
 
+/// A side of the reference's median that is never left.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
+#[serde(rename_all = "snake_case")]
+pub enum Stays {
+    /// No increase of precipitation restores it.
+    Below,
+    /// No decrease takes it away.
+    Above,
+}
+
+/// The root of one level.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub enum Root {
+    /// The change at which the excess is 0, percent.
+    At(f64),
+    /// There is none.
+    Stays(Stays),
+    /// Nothing can be said.
+    Unknown,
+}
+
 /// Mean cool-season precipitation of periods as long as a realization's, as a percentage above or below the record's mean.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct Reached {
     /// Years of a period.
     pub years: usize,
+    /// Whether it is of whole years: where the first survey date begins the water year there is no season before it.
+    pub is_of_whole_years: bool,
     /// The wettest of the record's periods, each of so many of its usable years in order; nothing where it has fewer.
     pub record_wettest_pct: Option<f64>,
     /// The wettest realization.
@@ -58,16 +83,16 @@ pub struct Reached {
 ///
 /// `excess` takes a change for each level, percent, and gives the excess of each; it is called some 10 times, and 30 at
 /// most. The bracket of -50 to +100 % is scanned in steps of 10 from 0 outwards, until every level has changed its sign or
-/// nothing is left; the sign change nearest 0 is narrowed to 0.01 %. Of two roots within one step none is found. An
-/// excess of exactly 0 is a root; a level without an excess has none.
+/// nothing is left; the sign change nearest 0, by straight lines between the steps, is narrowed to 0.01 %. Of two roots
+/// within one step none is found. An excess of exactly 0 is a root; a level without an excess has none.
 ///
 /// # Errors
 /// Those of `excess`.
 pub fn break_even_pct<E>(
     levels: usize,
     mut excess: impl FnMut(&[f64]) -> Result<Vec<f64>, E>,
-) -> Result<Vec<Option<f64>>, E> {
-    let mut brackets = scan(levels, &mut excess)?;
+) -> Result<Vec<Root>, E> {
+    let (mut brackets, stays) = scan(levels, &mut excess)?;
     let is_open =
         |brackets: &[Option<Bracket>]| brackets.iter().flatten().any(|of| of.width() > PRECISION_PCT);
     let mut taken = 0;
@@ -78,14 +103,15 @@ pub fn break_even_pct<E>(
         }
         taken += 1;
     }
-    Ok(brackets.into_iter().map(|bracket| bracket.map(|of| of.middle())).collect())
+    let root = |(bracket, stays): (Option<Bracket>, Root)| bracket.map_or(stays, |of| Root::At(of.middle()));
+    Ok(brackets.into_iter().zip(stays).map(root).collect())
 }
 
-/// The sign change nearest 0 of each level, between two steps of the scan.
+/// The sign change nearest 0 of each level, between two steps of the scan, and where a level without one stays.
 fn scan<E>(
     levels: usize,
     mut excess: impl FnMut(&[f64]) -> Result<Vec<f64>, E>,
-) -> Result<Vec<Option<Bracket>>, E> {
+) -> Result<(Vec<Option<Bracket>>, Vec<Root>), E> {
     let [least, most] = BREAK_EVEN_BRACKET_PCT;
     let mut scanned: Vec<(f64, Vec<f64>)> = Vec::new();
     let mut nearest = vec![None; levels];
@@ -103,11 +129,21 @@ fn scan<E>(
             let brackets = ends.filter_map(|ends| {
                 Bracket::new([ends[0].0, ends[1].0], [ends[0].1[level], ends[1].1[level]])
             });
-            *nearest = brackets.min_by(|a, b| a.distance().total_cmp(&b.distance()));
+            *nearest = brackets.min_by(|a, b| a.on_line().abs().total_cmp(&b.on_line().abs()));
         }
         distance += SCAN_PCT;
     }
-    Ok(nearest)
+    let stays = |level: usize| {
+        let mut excess = scanned.iter().map(|(_, excess)| excess[level]);
+        if excess.clone().all(|excess| excess < 0.0 && excess.is_finite()) {
+            Root::Stays(Stays::Below)
+        } else if excess.all(|excess| excess > 0.0 && excess.is_finite()) {
+            Root::Stays(Stays::Above)
+        } else {
+            Root::Unknown
+        }
+    };
+    Ok((nearest, (0..levels).map(stays).collect()))
 }
 
 /// Two changes between which the excess changes its sign, and the excess there.
@@ -135,9 +171,10 @@ impl Bracket {
         f64::midpoint(self.pct[0], self.pct[1])
     }
 
-    /// How far from 0 its root may lie at least.
-    fn distance(&self) -> f64 {
-        if self.pct[0] < 0.0 && self.pct[1] > 0.0 { 0.0 } else { self.pct[0].abs().min(self.pct[1].abs()) }
+    /// Where the straight line between its ends is 0.
+    fn on_line(&self) -> f64 {
+        let on_line = self.pct[0] + self.width() * self.excess[0] / (self.excess[0] - self.excess[1]);
+        if on_line.is_finite() { on_line } else { self.middle() }
     }
 
     /// Where to look next, after so many looks: by the ITP method of Oliveira & Takahashi (2021, ACM TOMS 47:5), where the
@@ -145,11 +182,10 @@ impl Bracket {
     /// never so far from the middle that it takes more than one look more than halving.
     fn next(&self, taken: i32) -> f64 {
         let (middle, width) = (self.middle(), self.width());
-        let on_line = self.pct[0] + width * self.excess[0] / (self.excess[0] - self.excess[1]);
-        let off_middle = on_line - middle;
-        if width <= PRECISION_PCT || !off_middle.is_finite() {
+        if width <= PRECISION_PCT {
             return middle;
         }
+        let off_middle = self.on_line() - middle;
         let towards_middle = TOWARDS_MIDDLE_PER_PCT * width * width + LEAST_TOWARDS_MIDDLE_PCT;
         let moved = (off_middle.abs() - towards_middle).max(0.0);
         let halvings = libm::ceil(libm::log2(SCAN_PCT / PRECISION_PCT)) + 1.0 - f64::from(taken);
@@ -170,15 +206,16 @@ mod tests {
     use super::*;
     use std::convert::Infallible;
 
-    fn roots(excess: impl Fn(usize, f64) -> f64, levels: usize) -> Vec<Option<f64>> {
+    fn roots(excess: impl Fn(usize, f64) -> f64, levels: usize) -> Vec<Root> {
         let all = |pct: &[f64]| {
             Ok::<_, Infallible>(pct.iter().enumerate().map(|(level, pct)| excess(level, *pct)).collect())
         };
         break_even_pct(levels, all).unwrap()
     }
 
-    /// Functions whose roots are known: a line, one that never comes back, one below 0, a root at 0, and a parabola with
-    /// roots at -20 and +35, of which the nearer is taken. 0.01 is the precision that the method asks for.
+    /// Functions whose roots are known: a line, one that stays below, one below 0, a root at 0, a parabola with roots at -20
+    /// and +35 of which the nearer is taken, one that stays above, and a parabola with roots at -9 and +0.5 in the two steps
+    /// beside 0. 0.01 is the precision that the method asks for.
     #[test]
     fn the_root_nearest_zero_is_found_to_a_hundredth() {
         let excess = |level: usize, pct: f64| match level {
@@ -186,13 +223,16 @@ mod tests {
             1 => -1.0 - pct / 1000.0,
             2 => pct + 7.654,
             3 => pct,
-            _ => (pct + 20.0) * (pct - 35.0) - 1e-9,
+            4 => (pct + 20.0) * (pct - 35.0) - 1e-9,
+            5 => 200.0 + pct,
+            _ => (pct + 9.0) * (pct - 0.5),
         };
-        let found = roots(excess, 5);
-        for (level, expected) in [(0, 23.456), (2, -7.654), (3, 0.0), (4, -20.0)] {
-            assert!((found[level].unwrap() - expected).abs() <= 0.01, "{level}: {found:?}");
+        let found = roots(excess, 7);
+        for (level, expected) in [(0, 23.456), (2, -7.654), (3, 0.0), (4, -20.0), (6, 0.5)] {
+            let Root::At(pct) = found[level] else { panic!("{level}: {found:?}") };
+            assert!((pct - expected).abs() <= 0.01, "{level}: {found:?}");
         }
-        assert_eq!(found[1], None, "none up to +100 %");
-        assert_eq!(roots(|_, _| f64::NEG_INFINITY, 1), [None], "no excess, no root");
+        assert_eq!([found[1], found[5]], [Root::Stays(Stays::Below), Root::Stays(Stays::Above)]);
+        assert_eq!(roots(|_, _| f64::NEG_INFINITY, 1), [Root::Unknown], "no excess, no root");
     }
 }

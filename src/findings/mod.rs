@@ -24,7 +24,9 @@ mod variance;
 mod yardstick;
 
 pub use answer::{BandFindings, Findings, OtherChange, Questions, Runs, answer};
-pub use break_even::{BREAK_EVEN_BRACKET_PCT, BreakEven, BreakEvenLevel, Reached, break_even_pct};
+pub use break_even::{
+    BREAK_EVEN_BRACKET_PCT, BreakEven, BreakEvenLevel, Reached, Root, Stays, break_even_pct,
+};
 pub use chance::{Chance, Chances};
 pub use crossing::{Crossing, CrossingRange, crossing};
 pub use distribution::{DOTS, Distribution};
@@ -39,6 +41,7 @@ pub use quantile::{quantile, sorted};
 pub use record::{OwnYear, RecordFindings, RecordQuestions};
 pub use record_range::{
     REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Range, RecordRange, RecordRangeLevel, Refit,
+    records_to_resample,
 };
 pub use resample::{Estimate, Resamples};
 pub use shift::{Shift, percent_change};

@@ -20,6 +20,16 @@ use serde::Serialize;
 pub const RESAMPLED_RECORDS: u32 = 20;
 /// Realizations that are run from each of them at most.
 pub const REALIZATIONS_OF_A_RECORD: u32 = 50;
+/// With fewer, a range over records would mostly be Monte Carlo error.
+const LEAST_REALIZATIONS: u32 = 20;
+/// A record with fewer years cannot tell what other records would be like.
+const LEAST_RECORD_YEARS: usize = 10;
+
+/// How many records are worth resampling from one with so many usable years, for a study with so many realizations.
+pub fn records_to_resample(record_years: usize, realizations: u32) -> u32 {
+    let is_worth_it = record_years >= LEAST_RECORD_YEARS && realizations >= LEAST_REALIZATIONS;
+    if is_worth_it { RESAMPLED_RECORDS } else { 0 }
+}
 
 /// The range of a number over resampled records, 5 to 95 %.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]

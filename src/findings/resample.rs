@@ -28,10 +28,12 @@ pub struct Resamples {
 }
 
 impl Resamples {
-    /// Draws the resamples of a study with so many realizations.
+    /// Draws the resamples of a study with so many realizations; none of a single one.
     pub fn new(seed: u64, realizations: usize) -> Self {
         let mut random = resampling_stream(seed);
-        let weights = (0..RESAMPLES)
+        // One realization drawn again is the same: how far others would move a number is then not known.
+        let resamples = if realizations < 2 { 0 } else { RESAMPLES };
+        let weights = (0..resamples)
             .map(|_| {
                 let mut weights = vec![0; realizations];
                 for _ in 0..realizations {

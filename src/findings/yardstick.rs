@@ -83,7 +83,8 @@ impl Levels<'_> {
     }
 }
 
-/// The yardsticks of a measure under one assumption, one for every length of a period that its realizations hold.
+/// The yardsticks of a measure under one assumption, one for every length of a period that its realizations hold. Those of
+/// shorter periods have so many values that their errors are taken from fewer resamples.
 pub(super) fn yardsticks(
     kind: Kind,
     assumed: Assumed<'_>,
@@ -93,7 +94,10 @@ pub(super) fn yardsticks(
 ) -> Vec<Yardstick> {
     let own = assumed.years.ncols();
     let shorter = PERIODS.into_iter().filter(|years| *years < own);
-    shorter.chain([own]).map(|years| yardstick(kind, assumed, shifts, levels, years, resamples)).collect()
+    let few = resamples.few();
+    let of_own = yardstick(kind, assumed, shifts, levels, own, resamples);
+    let of_shorter = shorter.map(|years| yardstick(kind, assumed, shifts, levels, years, &few));
+    of_shorter.chain([of_own]).collect()
 }
 
 fn yardstick(

@@ -1,5 +1,6 @@
-//! Holds what the page says to `summary.json`: every number that is put into words, as it was before rounding, stands
-//! there (or in `run.json`, where it is an assumption).
+//! Holds what the page says to `summary.json`: every number that is rounded for a sentence or a table, as it was before
+//! rounding and but for its sign, stands there (or in `run.json`, where it is an assumption). Counts that are written as they
+//! are pass by here.
 
 use super::*;
 use crate::cli::arguments::Arguments;
@@ -8,7 +9,7 @@ use clap::Parser;
 use serde_json::Value;
 
 /// Limits that are part of a definition and stand in sentences: 1 and 10 mm, 10 and 20 years, the bracket's 100 %, the
-/// humid range of 1 to 3 degC, the classes of percent of median, -0.41 of the observed mean's score.
+/// humid range of 1 to 3 degC, 2 degC of the caution about cause, the middle of Dai's curve, the classes of percent of median.
 const OF_DEFINITIONS: [f64; 11] = [1.0, 10.0, 20.0, 100.0, 3.0, 60.0, 80.0, 120.0, 140.0, 2.0, 1.2];
 
 /// Equal but for the rounding of a change of unit, 100 times or a thousandth.

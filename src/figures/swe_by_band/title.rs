@@ -14,7 +14,7 @@ struct Change<'a> {
     percent: Option<f64>,
 }
 
-/// `At +4 °C, most 1 April SWE is lost at 2 600–2 900 m: 180 mm (45 %); the largest share, 97 %, at 1 800–2 000 m`.
+/// `At +4 °C, 1 April SWE falls furthest at 2 600–2 900 m: 180 mm (45 %); the largest share, 97 %, at 1 800–2 000 m`.
 pub(super) fn title(
     findings: &Findings,
     headline: &MeasureFindings,
@@ -61,7 +61,7 @@ pub(super) fn title(
             )
         }
         (None, Some(most)) => format!(
-            "No elevation loses {name} at {place}; most is gained at {}: {}",
+            "No elevation loses {name} at {place}; it rises furthest at {}: {}",
             where_(most),
             how_much(most)
         ),
@@ -69,7 +69,7 @@ pub(super) fn title(
             let gaining = moved().filter(|change| change.change_mm > 0.0).count();
             let gain = if gaining == 1 { "gains" } else { "gain" };
             format!(
-                "At {place}, most {name} is lost at {}: {}; {gaining} of {} bands {gain}, at most {} at {}",
+                "At {place}, {name} falls furthest at {}: {}; {gaining} of {} bands {gain}, at most {} at {}",
                 where_(most),
                 how_much(most),
                 bands.len(),
@@ -86,7 +86,7 @@ pub(super) fn title(
             let share = share.map_or_else(String::new, |(change, percent)| {
                 format!("; the largest share, {} %, at {}", percent_size(percent), where_(change))
             });
-            format!("At {place}, most {name} is lost at {}: {}{share}", where_(most), how_much(most))
+            format!("At {place}, {name} falls furthest at {}: {}{share}", where_(most), how_much(most))
         }
     }
 }

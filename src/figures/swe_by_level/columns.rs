@@ -142,7 +142,9 @@ impl Labels {
             let place = (right_edge + 17.0, top_px + LABEL.leading() * (*line as f64 + 0.5));
             sheet.write(text, place, NOTE, HPos::Left, VPos::Center)?;
         }
-        for (at, lines) in self.columns.iter().enumerate() {
+        // Where not even bare numbers fit side by side, only every so many columns are written below.
+        let step = libm::ceil((self.width() + 8.0) / columns.width).max(1.0) as usize;
+        for (at, lines) in self.columns.iter().enumerate().step_by(step) {
             for (line, (text, lettering)) in lines.iter().enumerate() {
                 if !text.is_empty() {
                     let place = (columns.centre(at), top_px + LABEL.leading() * (line as f64 + 0.5));

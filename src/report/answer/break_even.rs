@@ -1,9 +1,9 @@
 //! How much more precipitation would make up for a warming, and whether so much was ever there.
 
-use super::super::numbers::{fixed, signed};
+use super::super::numbers::{counted, fixed, signed};
 use super::super::reader::Reader;
 use super::period_name;
-use crate::findings::{BREAK_EVEN_BRACKET_PCT, BreakEven, BreakEvenLevel, Findings, MeasureFindings};
+use crate::findings::{BREAK_EVEN_BRACKET_PCT, BreakEven, BreakEvenLevel, Findings, MeasureFindings, Stays};
 use crate::season::LEAST_REFERENCE_MM;
 
 /// A sentence a warmer level, and how wet periods have been; none where there is hardly any snow to regain.
@@ -17,20 +17,22 @@ pub(super) fn break_even(findings: &Findings, headline: &MeasureFindings, reader
         return Vec::new();
     }
     let name = period_name(findings, headline);
-    let mut words: Vec<String> = warmer.into_iter().map(|at| of_level(found, at, &name, reader)).collect();
+    let mut words: Vec<String> =
+        warmer.into_iter().filter_map(|at| of_level(found, at, &name, reader)).collect();
     let reached = &found.reached;
+    let of = if reached.is_of_whole_years { "Precipitation" } else { "Cool-season precipitation" };
+    let years = counted(reached.years, "year");
     let record = match reached.record_wettest_pct {
         Some(pct) => format!(
-            "the wettest run of {} usable years in the record brought {} % against its mean",
-            reached.years,
+            "the wettest run of {} in use brought {} % against the record's mean",
+            counted(reached.years, "year"),
             signed(pct, 0)
         ),
-        None => format!("the record has fewer than {} usable years", reached.years),
+        None => format!("the record has fewer than {} in use", counted(reached.years, "year")),
     };
     words.push(format!(
-        "Cool-season precipitation over {} years: {record}; the wettest of {} realizations brought {} %.",
-        reached.years,
-        fixed(reached.realizations as f64, 0),
+        "{of} over {years}: {record}; the wettest of {} brought {} %.",
+        counted(reached.realizations, "realization"),
         signed(reached.realizations_wettest_pct, 0)
     ));
     words
@@ -45,33 +47,42 @@ pub(super) fn at(
 ) -> Option<String> {
     let found = findings.break_even.as_ref().filter(|found| found.reference_median >= LEAST_REFERENCE_MM)?;
     let at = found.levels.iter().find(|level| level.level_c == findings.levels_c[at])?;
-    Some(of_level(found, at, &period_name(findings, headline), reader))
+    of_level(found, at, &period_name(findings, headline), reader)
 }
 
-fn of_level(found: &BreakEven, at: &BreakEvenLevel, name: &str, reader: Reader) -> String {
+fn of_level(found: &BreakEven, at: &BreakEvenLevel, name: &str, reader: Reader) -> Option<String> {
     let level = reader.level(at.level_c);
+    let [least, most] = BREAK_EVEN_BRACKET_PCT;
     let Some(pct) = at.precipitation_change_pct else {
-        let [_, most] = BREAK_EVEN_BRACKET_PCT;
-        return format!(
-            "At {level}, no increase of precipitation up to {} % restores the {name}.",
-            signed(most, 0)
-        );
+        return Some(match at.stays? {
+            Stays::Below => {
+                format!(
+                    "At {level}, no increase of precipitation up to {} % restores the {name}.",
+                    signed(most, 0)
+                )
+            }
+            Stays::Above => format!(
+                "At {level}, the {name} stays above the reference's median even with {} % less precipitation.",
+                fixed(-least, 0)
+            ),
+        });
     };
+    let size = fixed(pct.abs(), usize::from(pct.abs() < 9.95));
     if pct <= 0.0 {
-        return format!(
-            "At {level}, the {name} stands at the reference's median with {} % of precipitation: the warming costs nothing \
-             that would have to be made up.",
-            signed(pct, 0)
-        );
+        return Some(format!(
+            "At {level}, the {name} would stand at the reference's median with {size} % less precipitation: there is nothing to \
+             be made up for."
+        ));
     }
+    let reached = &found.reached;
+    let season = if reached.is_of_whole_years { "" } else { " in the cool season" };
     let so_wet = match at.realizations_that_reached {
-        0 => "none of the".to_owned(),
-        count => format!("{} of the", fixed(count as f64, 0)),
+        0 => "none".to_owned(),
+        count => fixed(count as f64, 0),
     };
-    format!(
-        "At {level}, {} % more precipitation on every wet day would bring the {name} back to the reference's median; {so_wet} \
-         {} realizations came to so much in the cool season by chance and assumption.",
-        fixed(pct, 0),
-        fixed(found.reached.realizations as f64, 0)
-    )
+    Some(format!(
+        "At {level}, {size} % more precipitation on every wet day would bring the {name} back to the reference's median; {so_wet} \
+         of {} came to so much{season} by chance and assumption.",
+        counted(reached.realizations, "realization")
+    ))
 }

@@ -29,7 +29,7 @@ pub(super) fn how_sure(findings: &Findings, headline: &MeasureFindings, reader: 
         if !parts.is_empty() {
             words.push(format!(
                 "Another record of the same kind would put {} (5–95 % of {} records resampled by years, {} realizations of \
-                 each): that comes of having only this record, and more realizations do not make it smaller.",
+                 each): that comes mostly of having only this record, which more realizations would not mend.",
                 parts.join(", and "),
                 record.records,
                 record.realizations

@@ -11,7 +11,8 @@ mod yardstick;
 pub use chance::{chance_in_table, towards_shift};
 
 use super::reader::Reader;
-use crate::findings::{Findings, LevelFindings, MeasureFindings};
+use crate::findings::{Findings, LevelFindings, MeasureFindings, Spread};
+use crate::season::{Kind, LEAST_REFERENCE_MM};
 
 /// The answer to the study's question.
 #[derive(Debug, Clone, Default, PartialEq, serde::Serialize)]
@@ -52,6 +53,9 @@ pub fn answer_in_words(findings: &Findings, reader: Reader) -> Answer {
     let Some(headline) = findings.basin.first() else {
         return Answer { verdict: "Nothing was measured.".to_owned(), ..Answer::default() };
     };
+    if is_scarce(headline) {
+        return Answer { verdict: verdict::verdict(findings, headline, reader), ..Answer::default() };
+    }
     let levels = || headline.levels.iter();
     let changed = |level: &&LevelFindings| level.shift.is_some();
     let mut answer = Answer {
@@ -106,6 +110,12 @@ fn at_a_glance(
 pub fn period_name(findings: &Findings, measure: &MeasureFindings) -> String {
     let statistic = if measure.measure.kind.is_date() { "median" } else { "mean" };
     format!("{}-year {statistic} {}", findings.years, measure.measure.title)
+}
+
+/// Whether the reference has hardly any snow to lose: ratios and ranges of it would be of rounding and single storms.
+pub fn is_scarce(headline: &MeasureFindings) -> bool {
+    let is_small = |spread: &Spread| spread.q50 < LEAST_REFERENCE_MM;
+    headline.measure.kind == Kind::AmountMm && headline.precipitation_spread.as_ref().is_some_and(is_small)
 }
 
 /// The warmer level nearest to 2 degC above the reference: what a sentence takes where one level must do.

@@ -2,9 +2,8 @@
 
 use super::super::numbers::{fixed, signed};
 use super::super::reader::Reader;
-use super::period_name;
+use super::{is_scarce, period_name};
 use crate::findings::{Crossing, CrossingRange, Findings, LevelFindings, MeasureFindings};
-use crate::season::{Kind, LEAST_REFERENCE_MM};
 
 /// A 5-95 % range of fewer pairs is their extremes.
 const LEAST_PAIRS_FOR_A_RANGE: usize = 20;
@@ -12,10 +11,7 @@ const LEAST_PAIRS_FOR_A_RANGE: usize = 20;
 /// Does warming outweigh the precipitation spread, and from where on?
 pub(super) fn verdict(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> String {
     let name = period_name(findings, headline);
-    if let Some(spread) = headline.precipitation_spread
-        && headline.measure.kind == Kind::AmountMm
-        && spread.q50 < LEAST_REFERENCE_MM
-    {
+    if let Some(spread) = headline.precipitation_spread.filter(|_| is_scarce(headline)) {
         return format!(
             "There is hardly any snow to lose: the reference's {name} is {} in the median. Check units, elevations and the \
              hemisphere if you know better.",
@@ -52,7 +48,7 @@ pub(super) fn verdict(findings: &Findings, headline: &MeasureFindings, reader: R
         }
         Crossing::Unknown => format!(
             "Whether warming outweighs the precipitation spread of the {name} cannot be said from this study: there is \
-             no level above the reference, or the reference does not spread."
+             no level above the reference, too few realizations, or a reference that does not spread."
         ),
     }
 }

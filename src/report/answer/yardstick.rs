@@ -1,6 +1,6 @@
 //! What the verdict measures with, and what it would be with another measure.
 
-use super::super::numbers::{fixed, trimmed};
+use super::super::numbers::{counted, fixed, trimmed};
 use super::super::reader::Reader;
 use super::period_name;
 use crate::findings::{Crossing, Findings, MeasureFindings, Yardstick};
@@ -13,12 +13,12 @@ pub(super) fn yardstick(findings: &Findings, headline: &MeasureFindings, reader:
     };
     let own = |of: &&Yardstick| of.years == findings.years;
     let mut words = vec![format!(
-        "The yardstick is the reference's {}, over {} realizations of {} years, with its own temperatures: median {}, 5–95 % \
+        "The yardstick is the reference's {}, over {} of {}, with its own temperatures: median {}, 5–95 % \
          from {} to {}. The half spread is the part of that range between the median and the end that a shift points to; \
          'outweighs' means that the median shift is larger.",
         period_name(findings, headline),
-        findings.realizations,
-        findings.years,
+        counted(findings.realizations, "realization"),
+        counted(findings.years, "year"),
         reader.amount(spread.q50),
         reader.amount(spread.q05),
         reader.amount(spread.q95)

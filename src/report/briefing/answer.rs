@@ -1,6 +1,6 @@
 //! The answer: the verdict, the questions that a reader asks next, and a line a level.
 
-use super::super::answer::{Answer, chance_in_table, towards_shift};
+use super::super::answer::{Answer, chance_in_table, is_scarce, towards_shift};
 use super::super::numbers::{DASH, days_moved, fixed, precision, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
@@ -16,7 +16,7 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
             dt { (asked.question) }
             dd { @for sentence in &asked.answer { p { (sentence) } } }
         } }
-        @if let Some(headline) = study.findings.basin.first() { (by_level(study.findings, headline, study.reader)) }
+        @if let Some(headline) = study.findings.basin.first().filter(|headline| !is_scarce(headline)) { (by_level(study.findings, headline, study.reader)) }
     }
 }
 

@@ -15,8 +15,8 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
         h2 { "Where it is lost" }
         (figures.of(Part::Elevation))
         @if let (Some(area), Some(snow)) = (study.beyond_stations, study.swe_beyond_stations) { p {
-            "Above the highest station lie " (fixed(100.0 * area.share_above, 0)) " % of the area and " (fixed(100.0 * snow.share_above, 0))
-            " % of the reference's " (headline.measure.title) "; below the lowest, " (fixed(100.0 * area.share_below, 0)) " and "
+            "Above the station lie " (fixed(100.0 * area.share_above, 0)) " % of the area and " (fixed(100.0 * snow.share_above, 0))
+            " % of the reference's " (headline.measure.title) "; below it, " (fixed(100.0 * area.share_below, 0)) " and "
             (fixed(100.0 * snow.share_below, 0)) " %. There the numbers hang on the gradients alone."
         } }
         div.scroll { table {

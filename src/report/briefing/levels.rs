@@ -1,6 +1,6 @@
 //! Tables level by level: some measures of the basin, a row each.
 
-use super::super::numbers::{DASH, fixed, signed};
+use super::super::numbers::{DASH, counted, fixed, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
 use crate::findings::{Findings, LevelFindings, MeasureFindings};
@@ -25,8 +25,8 @@ pub(super) fn table(study: &Study<'_>, is_asked: impl Fn(&MeasureFindings) -> bo
     html! {
         div.scroll { table {
             caption {
-                "Basin mean, median over " (findings.realizations) " realizations of " (findings.years)
-                "-year values; below it the median paired change from the reference ± its Monte Carlo error, in the same unit (points are \
+                "Basin mean, median over the " (findings.years) "-year values of " (counted(findings.realizations, "realization"))
+                "; below it the median paired change from the reference ± its Monte Carlo error, in the same unit (points are \
                  percentage points), its percentage, and how many times the half spread it is."
             }
             thead { tr {

@@ -91,6 +91,10 @@ fn hidden(findings: &Findings, on: &PercentOfMedian, reader: Reader) -> Option<S
     let (level_c, fixed_pct, moved_pct) = warmer
         .filter_map(|level| Some((level.level_c, level.median_percent?, level.median_percent_of_moved?)))
         .next()?;
+    // A moved normal that tells the same hides nothing.
+    if (fixed_pct - moved_pct).abs() < 2.0 {
+        return None;
+    }
     let none = on.levels.iter().filter(|level| level.moved_median_mm == 0.0).count();
     let none = match none {
         0 => String::new(),
@@ -98,7 +102,7 @@ fn hidden(findings: &Findings, on: &PercentOfMedian, reader: Reader) -> Option<S
     };
     Some(format!(
         "A normal that is computed anew in a warmer climate hides the change: at {} the median year has {} % of the fixed \
-         normal, and still {} % of the moved one.{none}",
+         normal, but {} % of the moved one.{none}",
         reader.level(level_c),
         fixed(fixed_pct, 0),
         fixed(moved_pct, 0)

@@ -1,6 +1,6 @@
 //! Water: volumes of single years by chance of exceedance, and around stated dates.
 
-use super::super::numbers::{DASH, fixed, precision, signed};
+use super::super::numbers::{DASH, counted, fixed, precision, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
 use super::{Figures, levels};
@@ -26,7 +26,7 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
         @for measure in volumes.iter().take(IN_FULL) { (by_chance(findings, measure, reader)) }
         (half_of_the_years(findings, &volumes, reader))
         details {
-            summary { "The same as depths over the basin, over periods of " (findings.years) " years" }
+            summary { "The same as depths over the basin, over periods of " (counted(findings.years, "year")) }
             (levels::table(study, |of| of.measure.is_volume))
         }
     } }

@@ -1,6 +1,6 @@
 //! The verdict by other yardsticks, and what would make up for the warming.
 
-use super::super::answer::{Answer, period_name};
+use super::super::answer::{Answer, is_scarce, period_name};
 use super::super::numbers::{DASH, fixed, trimmed};
 use super::super::reader::Reader;
 use super::super::study::Study;
@@ -11,7 +11,7 @@ use maud::{Markup, html};
 /// The section; nothing where nothing was measured.
 pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
     let findings = study.findings;
-    html! { @if let Some(headline) = findings.basin.first() {
+    html! { @if let Some(headline) = findings.basin.first().filter(|headline| !is_scarce(headline)) {
         h2 { "By other yardsticks" }
         @for sentence in &answer.yardstick { p { (sentence) } }
         (table(findings, headline, study.reader))
