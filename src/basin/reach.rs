@@ -20,7 +20,7 @@ impl Basin {
     /// The shares of area above the highest and below the lowest of some stations, each band's area spread evenly over its
     /// height. Results there hang on the gradients alone. None without stations.
     pub fn beyond(&self, stations_m: &[f64]) -> Option<BeyondStations> {
-        self.shares_beyond(stations_m, self.shares())
+        self.shares_beyond(stations_m, &self.shares())
     }
 
     /// The same shares of snow: `swe_mm` is what lies on each band, from the lowest. None without stations or snow.
@@ -28,15 +28,15 @@ impl Basin {
         let volumes: Vec<f64> =
             self.shares().iter().zip(swe_mm).map(|(share, swe_mm)| share * swe_mm).collect();
         let all = volumes.iter().sum::<f64>();
-        (all > 0.0)
-            .then(|| self.shares_beyond(stations_m, volumes.iter().map(|volume| volume / all).collect()))?
+        let shares: Vec<f64> = volumes.iter().map(|volume| volume / all).collect();
+        self.shares_beyond(stations_m, &shares).filter(|_| all > 0.0)
     }
 
-    fn shares_beyond(&self, stations_m: &[f64], of_bands: Vec<f64>) -> Option<BeyondStations> {
+    fn shares_beyond(&self, stations_m: &[f64], of_bands: &[f64]) -> Option<BeyondStations> {
         let lowest_m = stations_m.iter().copied().reduce(f64::min)?;
         let highest_m = stations_m.iter().copied().reduce(f64::max)?;
         let below = |elevation_m: f64| {
-            let below = self.bands.iter().zip(&of_bands).map(|(band, share)| {
+            let below = self.bands.iter().zip(of_bands).map(|(band, share)| {
                 share * ((elevation_m - band.lower_m) / (band.upper_m - band.lower_m)).clamp(0.0, 1.0)
             });
             below.sum::<f64>().min(1.0)

@@ -19,7 +19,7 @@ use rayon::prelude::*;
 pub fn run(plan: &Plan<'_>, bins: SweBins, watch: &dyn Watch) -> Result<Seasons, Halt> {
     let tally = Tally::new(bins, plan.levels);
     let kept = each(plan, watch, |workshop, number| workshop.run(number, &tally, watch))?;
-    Ok(Seasons::gather(plan, kept, tally.finish()))
+    Ok(Seasons::gather(plan, &kept, tally.finish()))
 }
 
 /// The basin means of the plan's realizations from each of several generators instead of its own, put together one
