@@ -61,7 +61,7 @@ impl BasinSeasons {
 }
 
 impl Seasons {
-    pub(super) fn gather(plan: &Plan<'_>, kept: Vec<Kept>, swe_days: SweDays) -> Self {
+    pub(super) fn gather(plan: &Plan<'_>, kept: &[Kept], swe_days: SweDays) -> Self {
         let basin = BasinSeasons::gather(plan, kept.iter().map(|kept| kept.basin.0.as_slice()));
         let (levels, bands, count) = (plan.levels, plan.bands, basin.measures.len());
         let mut seasons = Self {

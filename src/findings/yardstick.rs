@@ -104,7 +104,7 @@ fn yardstick(
     years: usize,
     resamples: &Resamples,
 ) -> Yardstick {
-    let pieces = pieces(kind, assumed.years, years);
+    let pieces = pieces(kind, &assumed.years, years);
     let spread = Spread::of(&pieces.iter().map(|(value, _)| *value).collect::<Vec<_>>());
     let periods = pieces.len();
     let spreads = Spread::resampled(&Ranked::new(pieces), resamples);
@@ -135,7 +135,7 @@ fn yardstick(
 
 /// The period values of pieces of so many years, each with its realization; years beyond the last whole piece are left
 /// out.
-fn pieces(kind: Kind, of: ArrayView2<'_, f64>, years: usize) -> Vec<(f64, usize)> {
+fn pieces(kind: Kind, of: &ArrayView2<'_, f64>, years: usize) -> Vec<(f64, usize)> {
     let mut pieces = Vec::with_capacity(of.len() / years.max(1));
     let mut one = Vec::with_capacity(years);
     for (realization, row) in of.rows().into_iter().enumerate() {
@@ -157,7 +157,7 @@ mod tests {
     #[test]
     fn pieces_are_means_of_their_years() {
         let years = array![[1.0, 3.0, 5.0, 9.0, 100.0], [2.0, 2.0, 4.0, 0.0, 100.0]];
-        let found = pieces(Kind::AmountMm, years.view(), 2);
+        let found = pieces(Kind::AmountMm, &years.view(), 2);
         assert_eq!(found, [(2.0, 0), (7.0, 0), (2.0, 1), (2.0, 1)]);
     }
 
