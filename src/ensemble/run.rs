@@ -11,8 +11,8 @@ use rayon::prelude::*;
 /// Runs every realization under every level, on the threads of the current rayon pool, and keeps basin and bands.
 ///
 /// Each realization depends on its number alone and results are put together in that order, so that any number of
-/// threads gives the same bits. Memory: one engine, one year block and one realization of weather a thread, beside what
-/// [`Seasons`] keeps.
+/// threads gives the same bits. Memory: one engine, one year block, one realization of weather and its years, measured,
+/// and one table of counted days a thread, beside what [`Seasons`] keeps.
 ///
 /// # Errors
 /// A ledger that does not close, or `watch` wanting to stop.
@@ -26,7 +26,7 @@ pub fn run(plan: &Plan<'_>, bins: SweBins, watch: &dyn Watch) -> Result<Seasons,
 /// generator at a time as they are asked for: the same bits as
 /// [`run`] keeps of them, with less work. All years of one name in one realization, whichever generator made it, must have
 /// the same weather, as those of one record resampled have: what has been run is not run again. Where all generators
-/// say that years repeat, that holds for all realizations together.
+/// take a record's years as they are, that holds for all realizations together.
 ///
 /// # Errors
 /// Those of [`run`].
