@@ -20,25 +20,25 @@ fn title(study: &Study<'_>) -> String {
 fn titles_hold_where_all_lose_where_some_gain_and_where_none_loses() {
     assert_eq!(
         title(&PLAIN),
-        "At +4 °C, most 1 April SWE is lost at 2\u{2009}600–2\u{2009}900 m: 384 mm (56 %)"
+        "At +4 °C, 1 April SWE falls furthest at 2\u{2009}600–2\u{2009}900 m: 384 mm (56 %)"
     );
     assert_eq!(
         title(&Study { highest_gains_mm: 150.0, ..PLAIN }),
-        "At +4 °C, most 1 April SWE is lost at 2\u{2009}300–2\u{2009}600 m: 240 mm (56 %); 1 of 3 bands gains, at most 216 mm \
+        "At +4 °C, 1 April SWE falls furthest at 2\u{2009}300–2\u{2009}600 m: 240 mm (56 %); 1 of 3 bands gains, at most 216 mm \
          (31 %) at 2\u{2009}600–2\u{2009}900 m"
     );
     assert_eq!(
         title(&Study { highest_gains_mm: 48.0, ..PLAIN }),
-        "At +4 °C, most 1 April SWE is lost at 2\u{2009}300–2\u{2009}600 m: 240 mm (56 %)"
+        "At +4 °C, 1 April SWE falls furthest at 2\u{2009}300–2\u{2009}600 m: 240 mm (56 %)"
     );
     assert_eq!(
         title(&Study { highest_gains_mm: 24.0, ..PLAIN }),
-        "At +4 °C, most 1 April SWE is lost at 2\u{2009}600–2\u{2009}900 m: 288 mm (42 %); the largest share, 56 %, at \
+        "At +4 °C, 1 April SWE falls furthest at 2\u{2009}600–2\u{2009}900 m: 288 mm (42 %); the largest share, 56 %, at \
          2\u{2009}000–2\u{2009}300 m"
     );
     assert_eq!(
         title(&Study { swe: [430.0, 90.0, 30.0], ..PLAIN }),
-        "No elevation loses 1 April SWE at +4 °C; most is gained at 2\u{2009}600–2\u{2009}900 m: 192 mm (28 %)"
+        "No elevation loses 1 April SWE at +4 °C; it rises furthest at 2\u{2009}600–2\u{2009}900 m: 192 mm (28 %)"
     );
     assert_eq!(
         title(&Study { swe: [430.0, 90.0, 0.0], ..PLAIN }),
