@@ -6,8 +6,8 @@ use super::failure::Failure;
 use super::progress::Progress;
 use crate::ensemble::{BasinSeasons, Halt, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
-    Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, Refit, Runs, TIMES_ASSUMED, answer,
-    records_to_resample,
+    Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit, Runs,
+    TIMES_ASSUMED, answer,
 };
 use crate::perturb::{Generator, TemperatureHeld, YearBlocks};
 use crate::season::Measures;
@@ -59,14 +59,15 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         let reference = run_records(&of_reference, &only, progress).map_err(halted)?;
         other_changes.extend(reference.map(|reference| OtherChange { times_assumed, reference }));
     }
-    let records = records_to_resample(ready.drawn_from.years.len(), realizations.count);
-    let records: Vec<Series> = (0..records).map(|at| generator.resampled_record(at)).collect();
+    let records: Vec<Series> = (0..RESAMPLED_RECORDS).map(|at| generator.resampled_record(at)).collect();
     let generators: Vec<YearBlocks<'_>> =
         records.iter().map(|record| YearBlocks { record, ..generator }).collect();
     let generators: Vec<&dyn Generator> = generators.iter().map(|of_record| of_record as _).collect();
     let of_records = Plan { realizations: of_a_record, ..plan };
     let of_records = run_records(&of_records, &generators, progress).map_err(halted)?;
-    let refit = |seasons: BasinSeasons| Refit::of(&seasons, &warming.levels_c, warming.reference);
+    let refit = |seasons: BasinSeasons| {
+        Refit::of(&seasons, ready.drawn_from.years.len(), &warming.levels_c, warming.reference)
+    };
     let refits: Vec<Refit> = of_records.map(refit).collect();
 
     // Only a warmer level has something to be made up for.

@@ -41,7 +41,6 @@ pub use quantile::{quantile, sorted};
 pub use record::{OwnYear, RecordFindings, RecordQuestions};
 pub use record_range::{
     REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Range, RecordRange, RecordRangeLevel, Refit,
-    records_to_resample,
 };
 pub use resample::{Estimate, Resamples};
 pub use shift::{Shift, percent_change};

@@ -21,15 +21,9 @@ pub const RESAMPLED_RECORDS: u32 = 20;
 /// Realizations that are run from each of them at most.
 pub const REALIZATIONS_OF_A_RECORD: u32 = 50;
 /// With fewer, a range over records would mostly be Monte Carlo error.
-const LEAST_REALIZATIONS: u32 = 20;
+const LEAST_REALIZATIONS: usize = 20;
 /// A record with fewer years cannot tell what other records would be like.
 const LEAST_RECORD_YEARS: usize = 10;
-
-/// How many records are worth resampling from one with so many usable years, for a study with so many realizations.
-pub fn records_to_resample(record_years: usize, realizations: u32) -> u32 {
-    let is_worth_it = record_years >= LEAST_RECORD_YEARS && realizations >= LEAST_REALIZATIONS;
-    if is_worth_it { RESAMPLED_RECORDS } else { 0 }
-}
 
 /// The range of a number over resampled records, 5 to 95 %.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
@@ -51,6 +45,8 @@ impl Range {
 pub struct RecordRange {
     /// Resampled records.
     pub records: usize,
+    /// Years of each, as many as the record has in use.
+    pub record_years: usize,
     /// Realizations of each: few, so that the ranges hold some Monte Carlo error of their own.
     pub realizations: usize,
     /// One entry a level, in the order of the levels; nothing but volumes at the reference.
@@ -85,6 +81,7 @@ pub struct RecordRangeLevel {
 /// What one resampled record answers, `[measure]`.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Refit {
+    record_years: usize,
     realizations: usize,
     measures: Vec<RefitMeasure>,
 }
@@ -107,10 +104,11 @@ struct RefitLevel {
 
 impl Refit {
     /// The answers of the runs that one resampled record gave.
-    pub fn of(seasons: &BasinSeasons, levels_c: &[f64], reference: usize) -> Self {
+    pub fn of(seasons: &BasinSeasons, record_years: usize, levels_c: &[f64], reference: usize) -> Self {
         let levels = Levels { levels_c, reference };
         let of = |(at, measure): (usize, &Measure)| RefitMeasure::of(seasons, at, measure, levels);
         Self {
+            record_years,
             realizations: seasons.periods.len_of(Axis(2)),
             measures: seasons.measures.iter().enumerate().map(of).collect(),
         }
@@ -154,6 +152,11 @@ impl RefitMeasure {
 }
 
 impl RecordRange {
+    /// Whether there are years and realizations enough for the ranges to tell of the record.
+    pub fn is_telling(&self) -> bool {
+        self.record_years >= LEAST_RECORD_YEARS && self.realizations >= LEAST_REALIZATIONS
+    }
+
     /// The ranges of one measure over all resampled records; nothing where there are fewer than two.
     pub(super) fn of(refits: &[Refit], measure: usize, levels_c: &[f64], area_km2: f64) -> Option<Self> {
         let of_each: Vec<&RefitMeasure> = refits.iter().map(|refit| &refit.measures[measure]).collect();
@@ -182,6 +185,7 @@ impl RecordRange {
         });
         Some(Self {
             records: refits.len(),
+            record_years: refits[0].record_years,
             realizations: refits[0].realizations,
             levels: levels.collect(),
             outweighs: range_of(of_each.iter().map(|refit| refit.outweighs)),

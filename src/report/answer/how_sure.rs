@@ -17,7 +17,7 @@ pub(super) fn how_sure(findings: &Findings, headline: &MeasureFindings, reader: 
     let Some(at) = telling_level(findings) else {
         return words;
     };
-    if let Some(record) = &headline.record_range {
+    if let Some(record) = headline.record_range.as_ref().filter(|record| record.is_telling()) {
         let level = &record.levels[at];
         let mut parts = Vec::new();
         if let Some(range) = level.percent_change {
