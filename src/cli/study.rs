@@ -64,7 +64,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
 
     progress.stage("writing figures, tables and briefing");
     let study = describe(&ready, &measures, years, &findings, path, shared);
-    let answer = answer_in_words(&findings, study.reader);
+    let answer = answer_in_words(&findings, study.warming, study.reader);
     let files = write_files(&study, &answer)?;
     if is_interrupted() {
         return Err(Failure::Interrupted);

@@ -230,3 +230,15 @@ fn hold_to_definitions(summary: &Value) {
         }
     }
 }
+
+/// Where the levels bring a stated change of precipitation, the verdict does not lay all of it on warming.
+#[test]
+fn a_stated_change_of_precipitation_is_named_with_the_warming() {
+    let basin = Basin::new();
+    let (plain, _) = study(&basin, "scenario.toml");
+    basin.exchange("levels_c = [0, 2]", "levels_c = [0, 2]\nprecipitation_change_pct_per_c = 5");
+    let (stated, _) = study(&basin, "scenario.toml");
+    let [plain, stated] = [plain, stated].map(|summary| summary["answer"]["verdict"].to_string());
+    let words = "warming with its stated change of precipitation";
+    assert!(stated.contains(words) && !plain.contains(words), "{plain} {stated}");
+}

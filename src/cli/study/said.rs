@@ -42,7 +42,7 @@ fn every_number_of_the_page_stands_in_the_summary() {
     let findings = Findings { record, ..findings };
     said::take();
     let study = describe(&ready, &measures, years, &findings, &path, &shared);
-    let answer = answer_in_words(&findings, study.reader);
+    let answer = answer_in_words(&findings, study.warming, study.reader);
     let files = write_files(&study, &answer).unwrap();
     let mut said: Vec<f64> = said::take().into_iter().map(f64::abs).collect();
     assert!(said.len() > 1000, "only {} numbers said", said.len());

@@ -84,7 +84,13 @@ pub(super) fn title(
             let most_share = most.percent.map(percent_size);
             let share = share.filter(|(_, percent)| Some(percent_size(*percent)) != most_share);
             let share = share.map_or_else(String::new, |(change, percent)| {
-                format!("; the largest share, {} %, at {}", percent_size(percent), where_(change))
+                let written = percent_size(percent);
+                let is_tie =
+                    |change: &&Change<'_>| change.percent.map(percent_size).as_ref() == Some(&written);
+                match moved().filter(is_tie).count() {
+                    0 | 1 => format!("; the largest share, {written} %, at {}", where_(change)),
+                    bands => format!("; the largest share, {written} %, in {bands} bands"),
+                }
             });
             format!("At {place}, {name} falls furthest at {}: {}{share}", where_(most), how_much(most))
         }

@@ -12,6 +12,7 @@ pub use chance::{chance_in_table, towards_shift};
 
 use super::reader::Reader;
 use crate::findings::{Findings, LevelFindings, MeasureFindings, Spread};
+use crate::perturb::Warming;
 use crate::season::{Kind, LEAST_REFERENCE_MM};
 
 /// The answer to the study's question.
@@ -48,19 +49,31 @@ pub struct Asked {
     pub answer: Vec<String>,
 }
 
+/// What a shift comes of: `warming`, or that with the change of precipitation that the study states for its levels.
+fn cause(findings: &Findings, warming: &Warming) -> &'static str {
+    let is_stated =
+        |level_c: &f64| warming.precipitation.factor(*level_c).iter().any(|factor| *factor != 1.0);
+    if findings.levels_c.iter().any(is_stated) {
+        "warming with its stated change of precipitation"
+    } else {
+        "warming"
+    }
+}
+
 /// Puts the findings into a reader's words.
-pub fn answer_in_words(findings: &Findings, reader: Reader) -> Answer {
+pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -> Answer {
     let Some(headline) = findings.basin.first() else {
         return Answer { verdict: "Nothing was measured.".to_owned(), ..Answer::default() };
     };
+    let verdict = verdict::verdict(findings, headline, cause(findings, warming), reader);
     if is_scarce(headline) {
-        return Answer { verdict: verdict::verdict(findings, headline, reader), ..Answer::default() };
+        return Answer { verdict, ..Answer::default() };
     }
     let levels = || headline.levels.iter();
     let changed = |level: &&LevelFindings| level.shift.is_some();
     let mut answer = Answer {
         at_a_glance: Vec::new(),
-        verdict: verdict::verdict(findings, headline, reader),
+        verdict,
         amounts: levels()
             .filter(changed)
             .map(|level| verdict::how_much(findings, headline, level, reader))

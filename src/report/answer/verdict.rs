@@ -9,7 +9,12 @@ use crate::findings::{Crossing, CrossingRange, Findings, LevelFindings, MeasureF
 const LEAST_PAIRS_FOR_A_RANGE: usize = 20;
 
 /// Does warming outweigh the precipitation spread, and from where on?
-pub(super) fn verdict(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> String {
+pub(super) fn verdict(
+    findings: &Findings,
+    headline: &MeasureFindings,
+    cause: &str,
+    reader: Reader,
+) -> String {
     let name = period_name(findings, headline);
     if let Some(spread) = headline.precipitation_spread.filter(|_| is_scarce(headline)) {
         return format!(
@@ -30,8 +35,8 @@ pub(super) fn verdict(findings: &Findings, headline: &MeasureFindings, reader: R
                 ),
             };
             format!(
-                "{span}, the warming outweighs the precipitation spread of the {name}; {elsewhere}, precipitation outweighs \
-                 the warming."
+                "{span}, the {cause} outweighs the precipitation spread of the {name}; {elsewhere}, precipitation outweighs \
+                 the {cause}."
             )
         }
         Crossing::NotReached { up_to_c } => {
@@ -41,13 +46,13 @@ pub(super) fn verdict(findings: &Findings, headline: &MeasureFindings, reader: R
                 format!(": at {} the shift is {ratio} times the half spread", reader.level(up_to_c))
             });
             format!(
-                "Up to {}, warming does not outweigh the precipitation spread of the {name}, precipitation outweighs the \
-                 warming{ratio}.",
+                "Up to {}, {cause} does not outweigh the precipitation spread of the {name}, precipitation outweighs the \
+                 {cause}{ratio}.",
                 reader.level(up_to_c)
             )
         }
         Crossing::Unknown => format!(
-            "Whether warming outweighs the precipitation spread of the {name} cannot be said from this study: there is \
+            "Whether {cause} outweighs the precipitation spread of the {name} cannot be said from this study: there is \
              no level above the reference, too few realizations, or a reference that does not spread."
         ),
     }
