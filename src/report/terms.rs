@@ -4,7 +4,7 @@ use super::reader::Reader;
 use crate::season::{BARE_MM, LEAST_PEAK_MM, RAIN_ON_SNOW_MM};
 
 /// Terms and their meanings, in a reader's units.
-pub(super) fn terms(reader: Reader) -> [(&'static str, String); 22] {
+pub(super) fn terms(reader: Reader) -> [(&'static str, String); 26] {
     let water_equivalent = format!("depth of water if the snow were melted, {}", reader.units.depth().word);
     let warming_level = format!(
         "degrees added to the record's temperatures, whose own climate is {}; all levels are compared with the reference",
@@ -25,7 +25,7 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 22] {
          and snowy ground",
         reader.limit(RAIN_ON_SNOW_MM)
     );
-    let terms: [(&'static str, &str); 22] = [
+    let terms: [(&'static str, &str); 26] = [
         ("Snow water equivalent (SWE)", &water_equivalent),
         ("Water year", "starts on the stated day and is named for the calendar year in which it ends"),
         ("Warming level", &warming_level),
@@ -47,6 +47,24 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 22] {
         ),
         ("Half spread", "from the reference's median to the end of its spread that a shift points to"),
         ("Weather spread", "the same range over single years"),
+        (
+            "Temperature-held spread",
+            "the precipitation spread of realizations whose mean temperature of every month is shifted to the record's, so that \
+             none is warm or cool by chance",
+        ),
+        (
+            "Chance of exceedance",
+            "share of single years that bring at least so much: 90 % reads the dry side, 10 % the wet",
+        ),
+        (
+            "Percent of median, moved normal",
+            "snow water over the sum of the bands' medians of the baseline years; a moved normal is the same years' median at \
+             the level itself",
+        ),
+        (
+            "Break-even precipitation",
+            "change of all precipitation at which the warmed median is back at the reference's",
+        ),
         ("Melt-out", &melt_out),
         (
             "Net melt",

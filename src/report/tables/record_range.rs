@@ -8,8 +8,9 @@ use csv::Writer;
 /// One row a basin measure and level but the reference. Shifts are in the measure's own unit, which stands in a column.
 pub(super) fn record_range(findings: &Findings, units: UnitSystem) -> Vec<u8> {
     let mut writer = Writer::from_writer(Vec::new());
-    let mut header =
-        ["measure", "unit_of_shift", "records", "realizations_of_each"].map(str::to_owned).to_vec();
+    let mut header = ["measure", "unit_of_shift", "records", "years_of_each", "realizations_of_each"]
+        .map(str::to_owned)
+        .to_vec();
     header.push(format!("level_{}", units.warming().suffix));
     for number in [
         "shift",
@@ -31,6 +32,7 @@ pub(super) fn record_range(findings: &Findings, units: UnitSystem) -> Vec<u8> {
                 name(&found.measure, units),
                 unit.to_owned(),
                 of_records.records.to_string(),
+                of_records.record_years.to_string(),
                 of_records.realizations.to_string(),
                 units.warming().of(level.level_c).to_string(),
             ];
