@@ -6,7 +6,7 @@
 
 use chrono::Datelike;
 use std::fmt::Write;
-use thawline::perturb::{Generator, YearBlocks};
+use thawline::perturb::{Generator, MeanChange, YearBlocks};
 use thawline::weather::{Series, YearSpan};
 
 /// Ten water years of one day each, with a gap after the sixth, and 1 mm of rain on every day.
@@ -31,10 +31,10 @@ fn first_draws_of_the_year_block_generator() {
     let record = record();
     let mut drawn = String::new();
     for (seed, realization) in [(1, 0), (1, 1), (20_260_401, 299)] {
-        let blocks =
-            YearBlocks { record: &record, seed, years: 12, mean_run_years: 2.0, mean_change_sd_pct: 10.0 };
+        let blocks = YearBlocks { record: &record, seed, mean_run_years: 2.0 };
+        let changed = MeanChange { generator: &blocks, seed, standard_deviation_pct: 10.0 };
         let mut into = Series::default();
-        blocks.fill(realization, &mut into);
+        changed.fill(realization, 12, &mut into);
         let years: Vec<i32> = into.years.iter().map(|year| year.water_year).collect();
         writeln!(drawn, "{seed} {realization} {} {years:?}", into.precipitation_mm[0]).unwrap();
     }

@@ -40,6 +40,14 @@ pub(super) enum Command {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
     },
+    /// Write the station weather of one realization, day by day, as CSV
+    Weather {
+        /// The scenario, a TOML file; `-` reads it from standard input
+        scenario: PathBuf,
+        /// Which realization, 1 the first
+        #[arg(long, value_name = "N", default_value_t = 1, value_parser = clap::value_parser!(u32).range(1..=100_000))]
+        realization: u32,
+    },
     /// Read and check everything a study would use; write nothing
     Check {
         /// The scenario, a TOML file; `-` reads it from standard input

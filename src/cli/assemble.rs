@@ -10,7 +10,7 @@ use crate::basin::Basin;
 use crate::fault::{Fault, Unlikely};
 use crate::fit::{Comparison, Model, Site, compare};
 use crate::observed::Observations;
-use crate::perturb::MonthlyChange;
+use crate::perturb::{MonthlyChange, Recipe};
 use crate::report::{Input, Origin, Reader};
 use crate::scenario::{DefaultInForce, Document, Draft, ObservedTyped, Scenario};
 use crate::snow::{LaneSpec, Lanes, OpenLedger, correct_catch};
@@ -86,6 +86,8 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                     None
                 })
             });
+            let of_generator = recipe_of(&scenario).check(&drawn_from).map_err(|fault| vec![fault]);
+            let of_generator = take(of_generator, &mut faults).flatten();
             let stated = scenario.weather.baseline_years;
             let baseline_years = BaselineYears::of(stated, &weather.years).map_err(|fault| vec![fault]);
             let Some(baseline_years) = take(baseline_years, &mut faults).filter(|_| faults.is_empty()) else {
@@ -110,6 +112,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 files.push(file);
             }
             unlikely.extend(baseline_years.unlikely());
+            unlikely.extend(of_generator);
             let mut defaults = draft.defaults;
             note_baseline_years(&baseline_years, &mut defaults);
             let ready = Ready {
@@ -273,6 +276,11 @@ impl Ready {
         if all_mm > 0.0 { snow_mm / all_mm } else { 0.0 }
     }
 
+    /// How the study's weather is made.
+    pub fn recipe(&self) -> Recipe {
+        recipe_of(&self.scenario)
+    }
+
     /// Elevations of all stations, m.
     pub fn stations_m(&self) -> Vec<f64> {
         vec![self.scenario.weather.station_elevation_m]
@@ -298,6 +306,16 @@ impl Ready {
             })
             .collect();
         Lanes::new(&groups)
+    }
+}
+
+fn recipe_of(scenario: &Scenario) -> Recipe {
+    Recipe {
+        choice: scenario.realizations.generator,
+        seed: scenario.seed,
+        wet_day_mm: scenario.realizations.wet_day_mm,
+        water_year_starts: scenario.season.water_year_starts,
+        cool_season_ends: scenario.season.survey_dates[0],
     }
 }
 

@@ -4,7 +4,7 @@ use super::assemble::Ready;
 use crate::baseline::Seasons as SeasonsOf;
 use crate::ensemble::{BasinSeasons, Halt, Plan, Watch, run_records};
 use crate::findings::{BreakEven, BreakEvenLevel, Reached, Root, break_even_pct, quantile, sorted};
-use crate::perturb::{Generator, MonthlyChange, YearBlocks};
+use crate::perturb::{Generator, MeanChange, MonthlyChange};
 use crate::season::Measures;
 use crate::weather::Series;
 
@@ -20,11 +20,11 @@ pub(super) fn break_even(
     ready: &Ready,
     plan: &Plan<'_>,
     changes: &[MonthlyChange],
-    generator: YearBlocks<'_>,
+    generator: &MeanChange<'_>,
     watch: &dyn Watch,
 ) -> Result<BreakEven, Halt> {
     let all = plan.realizations;
-    let unchanged = YearBlocks { mean_change_sd_pct: 0.0, ..generator };
+    let unchanged = generator.generator;
     let realizations = plan.realizations.min(BREAK_EVEN_REALIZATIONS);
     let measures = Measures::of_snow(plan.measures.settings().clone(), ready.basin.area_km2());
     let plan = Plan { realizations, measures: &measures, ..*plan };
@@ -35,7 +35,7 @@ pub(super) fn break_even(
         scaled[plan.reference] = changes[plan.reference].clone();
         let lanes = ready.lanes(&scaled);
         let plan = Plan { lanes: &lanes, ..plan };
-        let seasons: Vec<BasinSeasons> = run_records(&plan, &[&unchanged], watch)?.collect();
+        let seasons: Vec<BasinSeasons> = run_records(&plan, &[unchanged], watch)?.collect();
         let of = |level: usize| {
             let periods = seasons[0].periods.index_axis(ndarray::Axis(0), level);
             quantile(&sorted(periods.row(0).iter().copied()), 0.5)
@@ -50,14 +50,14 @@ pub(super) fn break_even(
         Ok::<_, Halt>(medians.into_iter().map(|median| median - reference_median).collect())
     })?;
     let survey = ready.scenario.season.survey_dates[0];
-    let wetness = Wetness::of(&generator, all, survey, watch)?;
+    let wetness = Wetness::of(&ready.drawn_from, generator, [all as usize, plan.years], survey, watch)?;
     let levels_c = &ready.scenario.warming.levels_c;
     let levels = levels_c.iter().zip(roots).enumerate().filter(|(level, _)| *level != plan.reference);
     Ok(BreakEven {
         realizations: plan.realizations as usize,
         reference_median,
         levels: levels.map(|(_, (level_c, root))| wetness.level(*level_c, root)).collect(),
-        reached: wetness.reached(generator.years),
+        reached: wetness.reached(plan.years),
     })
 }
 
@@ -71,30 +71,31 @@ struct Wetness {
 
 impl Wetness {
     fn of(
-        generator: &YearBlocks<'_>,
-        realizations: u32,
+        record: &Series,
+        generator: &dyn Generator,
+        [realizations, years]: [usize; 2],
         survey: crate::calendar::MonthDay,
         watch: &dyn Watch,
     ) -> Result<Self, Halt> {
         let mean = |values: &[(i32, f64)]| values.iter().map(|(_, mm)| mm).sum::<f64>() / values.len() as f64;
-        let is_of_whole_years = SeasonsOf::of(generator.record, survey).cool.precipitation_mm.is_empty();
+        let is_of_whole_years = SeasonsOf::of(record, survey).cool.precipitation_mm.is_empty();
         let of = |series: &Series| {
             let seasons = SeasonsOf::of(series, survey);
             if is_of_whole_years { seasons.warm.precipitation_mm } else { seasons.cool.precipitation_mm }
         };
-        let record = of(generator.record);
+        let record = of(record);
         let record_mm = mean(&record);
         let above = |values: &[(i32, f64)]| 100.0 * (mean(values) / record_mm - 1.0);
         let mut series = Series::default();
-        let mut realizations_pct = Vec::with_capacity(realizations as usize);
-        for number in 0..realizations {
+        let mut realizations_pct = Vec::with_capacity(realizations);
+        for number in 0..realizations as u32 {
             if watch.wants_stop() {
                 return Err(Halt::Stopped);
             }
-            generator.fill(number, &mut series);
+            generator.fill(number, years, &mut series);
             realizations_pct.push(above(&of(&series)));
         }
-        let record_wettest_pct = record.windows(generator.years).map(above).max_by(f64::total_cmp);
+        let record_wettest_pct = record.windows(years).map(above).max_by(f64::total_cmp);
         Ok(Self { is_of_whole_years, realizations_pct, record_wettest_pct })
     }
 

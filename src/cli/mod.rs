@@ -14,6 +14,7 @@ mod progress;
 mod runs;
 mod start;
 mod study;
+mod weather;
 
 pub use failure::{Failure, status};
 
@@ -32,6 +33,7 @@ pub fn run() -> u8 {
     let result = match arguments.command {
         Command::Study { scenario } => study::run(&scenario, &shared),
         Command::Daily { scenario } => daily::run(&scenario, &shared),
+        Command::Weather { scenario, realization } => weather::run(&scenario, realization, &shared),
         Command::Check { scenario } => check::run(&scenario, &shared),
         Command::Start { folder } => start::run(&folder, &shared),
     };

@@ -9,7 +9,7 @@ use crate::findings::{
     Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit, Runs,
     TIMES_ASSUMED, answer,
 };
-use crate::perturb::{Generator, TemperatureHeld, YearBlocks};
+use crate::perturb::{Generator, MeanChange, TemperatureHeld};
 use crate::season::Measures;
 use crate::snow::{OpenLedger, Path};
 use crate::weather::Series;
@@ -24,13 +24,9 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let lanes = ready.lanes(&changes);
     let reference_lanes = ready.lanes(&changes[warming.reference..=warming.reference]);
     let mean_change_sd_pct = realizations.mean_change_sd_pct.unwrap_or(0.0);
-    let generator = YearBlocks {
-        record: &ready.drawn_from,
-        seed: scenario.seed,
-        years: realizations.years,
-        mean_run_years: realizations.mean_run_years,
-        mean_change_sd_pct,
-    };
+    let (recipe, seed) = (ready.recipe(), scenario.seed);
+    let made = recipe.of(&ready.drawn_from);
+    let generator = MeanChange { generator: &*made, seed, standard_deviation_pct: mean_change_sd_pct };
     let plan = Plan {
         lanes: &lanes,
         levels: changes.len(),
@@ -39,6 +35,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         measures,
         generator: &generator,
         realizations: realizations.count,
+        years: realizations.years,
         path: Path::default(),
     };
     let times_assumed: &[f64] = if mean_change_sd_pct > 0.0 { &TIMES_ASSUMED } else { &[] };
@@ -53,16 +50,19 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let held = run(&Plan { generator: &held, ..of_reference }, bins, progress).map_err(halted)?;
     let mut other_changes = Vec::with_capacity(times_assumed.len());
     for times_assumed in times_assumed.iter().copied() {
-        let mean_change_sd_pct = mean_change_sd_pct * times_assumed;
-        let generator = YearBlocks { mean_change_sd_pct, ..generator };
+        let standard_deviation_pct = mean_change_sd_pct * times_assumed;
+        let generator = MeanChange { standard_deviation_pct, ..generator };
         let only: [&dyn Generator; 1] = [&generator];
         let reference = run_records(&of_reference, &only, progress).map_err(halted)?;
         other_changes.extend(reference.map(|reference| OtherChange { times_assumed, reference }));
     }
-    let records: Vec<Series> = (0..RESAMPLED_RECORDS).map(|at| generator.resampled_record(at)).collect();
-    let generators: Vec<YearBlocks<'_>> =
-        records.iter().map(|record| YearBlocks { record, ..generator }).collect();
-    let generators: Vec<&dyn Generator> = generators.iter().map(|of_record| of_record as _).collect();
+    let resampled = |number: u32| recipe.resampled_record(&ready.drawn_from, number);
+    let records: Vec<Series> = (0..RESAMPLED_RECORDS).map(resampled).collect();
+    let made_of_records: Vec<Box<dyn Generator + '_>> =
+        records.iter().map(|record| recipe.of(record)).collect();
+    let changed: Vec<MeanChange<'_>> =
+        made_of_records.iter().map(|of_record| MeanChange { generator: &**of_record, ..generator }).collect();
+    let generators: Vec<&dyn Generator> = changed.iter().map(|of_record| of_record as _).collect();
     let of_records = Plan { realizations: of_a_record, ..plan };
     let of_records = run_records(&of_records, &generators, progress).map_err(halted)?;
     let refit = |seasons: BasinSeasons| {
@@ -73,7 +73,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     // Only a warmer level has something to be made up for.
     let break_even = if warming.reference + 1 < warming.levels_c.len() {
         progress.stage("looking for the precipitation that would make up for the warming");
-        Some(break_even(ready, &plan, &changes, generator, &Quiet(progress)).map_err(halted)?)
+        Some(break_even(ready, &plan, &changes, &generator, &Quiet(progress)).map_err(halted)?)
     } else {
         None
     };

@@ -123,7 +123,8 @@ fn describe<'a>(
         snow: &scenario.snow,
         warming: &scenario.warming.warming,
         mean_change_sd_pct: scenario.realizations.mean_change_sd_pct,
-        mean_run_years: scenario.realizations.mean_run_years,
+        generator: scenario.realizations.generator,
+        wet_day_mm: scenario.realizations.wet_day_mm,
         record: Record {
             counts: &ready.record.counts,
             skipped: &ready.record.skipped,

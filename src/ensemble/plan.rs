@@ -21,6 +21,8 @@ pub struct Plan<'a> {
     pub generator: &'a dyn Generator,
     /// How many realizations.
     pub realizations: u32,
+    /// Water years of each.
+    pub years: usize,
     /// Compiled form of the engine's row passes.
     pub path: Path,
 }

@@ -48,7 +48,7 @@ impl<'p> Workshop<'p> {
     /// Runs a realization from bare ground, and measures every column, bands and basin means.
     pub fn run(&mut self, number: u32, tally: &Tally, watch: &dyn Watch) -> Result<Kept, Halt> {
         let plan = self.plan;
-        self.forget(plan.generator.drawn(number).is_some());
+        self.forget(plan.generator.drawn(number, plan.years).is_some());
         self.run_years(number, plan.generator, watch, |block, _| Remembered {
             is_perennial: plan.keeps_snow(block),
             swe_bins: tally.bins(block),
@@ -58,8 +58,7 @@ impl<'p> Workshop<'p> {
         Ok(self.keep())
     }
 
-    /// Runs the same realization from each of several generators, and measures the basin means alone. Years that have the
-    /// same name in two of them must have the same weather.
+    /// Runs the same realization from each of several generators, and measures the basin means alone.
     pub fn run_records(
         &mut self,
         number: u32,
@@ -67,8 +66,12 @@ impl<'p> Workshop<'p> {
         watch: &dyn Watch,
     ) -> Result<Vec<BasinKept>, Halt> {
         let plan = self.plan;
-        self.forget(generators.iter().all(|generator| generator.drawn(number).is_some()));
+        self.forget(generators.iter().all(|generator| generator.drawn(number, plan.years).is_some()));
+        let keep_names = generators.iter().all(|generator| generator.keeps_names());
         let of = |generator: &&dyn Generator| {
+            if !keep_names {
+                self.memory.clear();
+            }
             self.run_years(number, *generator, watch, |block, means| {
                 block.copy_means(means);
                 Remembered {
@@ -99,12 +102,12 @@ impl<'p> Workshop<'p> {
         watch: &dyn Watch,
         measure: impl Fn(&mut YearBlock, &mut YearBlock) -> Remembered,
     ) -> Result<(), Halt> {
-        let Self { engine, weather, means, memory, years, .. } = self;
-        let drawn = generator.drawn(number);
+        let Self { plan, engine, weather, means, memory, years } = self;
+        let drawn = generator.drawn(number, plan.years);
         let (weather, spans) = match &drawn {
             Some((record, spans)) => (*record, spans.as_slice()),
             None => {
-                generator.fill(number, weather);
+                generator.fill(number, plan.years, weather);
                 (&*weather, weather.years.as_slice())
             }
         };

@@ -18,6 +18,11 @@ pub(super) fn record_stream(seed: u64, number: u32) -> ChaCha8Rng {
     numbered(seed, (1 << 33) + u64::from(number))
 }
 
+/// The stream by which a generator learns how its own years vary: beyond all others.
+pub(super) fn calibration_stream(seed: u64) -> ChaCha8Rng {
+    numbered(seed, 1 << 34)
+}
+
 fn numbered(seed: u64, stream: u64) -> ChaCha8Rng {
     let mut random = ChaCha8Rng::seed_from_u64(seed);
     random.set_stream(stream);

@@ -21,8 +21,8 @@ impl<'g> TemperatureHeld<'g> {
 }
 
 impl Generator for TemperatureHeld<'_> {
-    fn fill(&self, realization: u32, into: &mut Series) {
-        self.generator.fill(realization, into);
+    fn fill(&self, realization: u32, years: usize, into: &mut Series) {
+        self.generator.fill(realization, years, into);
         let own_c = monthly_means_c(into);
         let mut shift_c = [0.0; 12];
         for (shift_c, (record_c, own_c)) in shift_c.iter_mut().zip(self.record_c.iter().zip(own_c)) {

@@ -2,11 +2,10 @@
 //! Politis & Romano (1994) takes them (method, section 8).
 
 use super::Generator;
-use super::mean_change::mean_change_factor;
-use super::stream::{record_stream, stream};
+use super::mean_change::stream_after_mean_change;
+use super::stream::record_stream;
 use crate::weather::{Series, YearSpan};
 use rand::{Rng, RngExt};
-use rand_distr::{Distribution, StandardNormal};
 
 /// Resamples a record's water years in runs of random length, weather kept jointly and leap days kept.
 #[derive(Debug, Clone, Copy)]
@@ -15,39 +14,29 @@ pub struct YearBlocks<'r> {
     pub record: &'r Series,
     /// Seed of the study.
     pub seed: u64,
-    /// Years in a realization.
-    pub years: usize,
     /// Mean length of a run of consecutive years, at least 1.
     pub mean_run_years: f64,
-    /// Assumed standard deviation of the change of mean precipitation, percent; 0 for none.
-    pub mean_change_sd_pct: f64,
 }
 
 impl Generator for YearBlocks<'_> {
-    /// Draws z of the mean change first, wanted or not, so that the order of years does not depend on it; then the years.
-    fn fill(&self, realization: u32, into: &mut Series) {
-        let mut random = stream(self.seed, realization);
-        let draw: f64 = StandardNormal.sample(&mut random);
-        let factor = mean_change_factor(self.mean_change_sd_pct, draw);
+    fn fill(&self, realization: u32, years: usize, into: &mut Series) {
         into.clear();
-        self.draw_years(&mut random, self.years, |year, _| {
+        self.draw_years(&mut stream_after_mean_change(self.seed, realization), years, |year, _| {
             into.push_year(self.record, &self.record.years[year], !into.years.is_empty());
         });
-        for precipitation in &mut into.precipitation_mm {
-            *precipitation *= factor;
-        }
     }
 
-    /// Where no change of mean precipitation is assumed, years are the record's own.
-    fn drawn(&self, realization: u32) -> Option<(&Series, Vec<YearSpan>)> {
-        if self.mean_change_sd_pct != 0.0 {
-            return None;
-        }
-        let mut random = stream(self.seed, realization);
-        let _unused_draw: f64 = StandardNormal.sample(&mut random);
-        let mut years = Vec::with_capacity(self.years);
-        self.draw_years(&mut random, self.years, |year, _| years.push(self.record.years[year]));
-        Some((self.record, years))
+    /// Years are the record's own.
+    fn drawn(&self, realization: u32, years: usize) -> Option<(&Series, Vec<YearSpan>)> {
+        let mut drawn = Vec::with_capacity(years);
+        self.draw_years(&mut stream_after_mean_change(self.seed, realization), years, |year, _| {
+            drawn.push(self.record.years[year]);
+        });
+        Some((self.record, drawn))
+    }
+
+    fn keeps_names(&self) -> bool {
+        true
     }
 }
 

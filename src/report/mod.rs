@@ -16,6 +16,7 @@ mod summary;
 mod tables;
 mod terms;
 mod trends;
+mod weather;
 
 pub use answer::{Answer, answer_in_words, period_name};
 pub use briefing::briefing_html;
@@ -27,6 +28,7 @@ pub use reader::Reader;
 pub use study::{Input, Origin, Record, Study};
 pub use summary::{daily_manifest_json, manifest_json, summary_json};
 pub use tables::{ReportFile, tables};
+pub use weather::weather_csv;
 
 /// Version of every JSON document we write: a number removed or renamed raises it.
 pub const SCHEMA_VERSION: u32 = 2;

@@ -6,7 +6,7 @@ use crate::basin::{Basin, BeyondStations};
 use crate::ensemble::RecordYear;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
-use crate::perturb::Warming;
+use crate::perturb::{GeneratorChoice, Warming};
 use crate::season::{Measure, SeasonSettings};
 use crate::snow::{GaugeMultiplier, SnowParams};
 use crate::weather::{Counts, SkippedYear};
@@ -36,8 +36,10 @@ pub struct Study<'a> {
     pub warming: &'a Warming,
     /// Assumed standard deviation of the change of mean precipitation, percent.
     pub mean_change_sd_pct: Option<f64>,
-    /// Mean length of a run of record years.
-    pub mean_run_years: f64,
+    /// What makes the realizations.
+    pub generator: GeneratorChoice,
+    /// A day is wet whose precipitation lies above this, mm.
+    pub wet_day_mm: f64,
     /// The record.
     pub record: Record<'a>,
     /// What was found.

@@ -160,7 +160,8 @@ struct Realizations {
     generator: &'static str,
     count: usize,
     years: usize,
-    mean_run_years: f64,
+    mean_run_years: Option<f64>,
+    wet_day_mm: f64,
     mean_change_sd_pct: Option<f64>,
 }
 
@@ -214,10 +215,11 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
             detrended: study.record.detrended,
             baseline_years: findings.record.as_ref().map(|record| &record.baseline_years),
             realizations: Realizations {
-                generator: "year-blocks",
+                generator: study.generator.name(),
                 count: findings.realizations,
                 years: findings.years,
-                mean_run_years: study.mean_run_years,
+                mean_run_years: study.generator.mean_run_years(),
+                wet_day_mm: study.wet_day_mm,
                 mean_change_sd_pct: study.mean_change_sd_pct,
             },
             report_units: study.reader.units,

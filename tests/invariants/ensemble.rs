@@ -7,7 +7,7 @@ use proptest::prelude::*;
 use rayon::ThreadPoolBuilder;
 use thawline::calendar::MonthDay;
 use thawline::ensemble::{BasinSeasons, Plan, Seasons, Silent, SweBins, run, run_records};
-use thawline::perturb::{Generator, MonthlyChange, TemperatureHeld, YearBlocks};
+use thawline::perturb::{Generator, MeanChange, MonthlyChange, TemperatureHeld, YearBlocks};
 use thawline::season::{Measures, SeasonSettings};
 use thawline::snow::{Lanes, Path};
 use thawline::weather::Series;
@@ -45,10 +45,15 @@ impl Study {
     }
 
     fn generator<'r>(&self, record: &'r Series) -> YearBlocks<'r> {
-        YearBlocks { record, seed: 20, years: 3, mean_run_years: 2.0, mean_change_sd_pct: 5.0 }
+        YearBlocks { record, seed: 20, mean_run_years: 2.0 }
     }
 
-    fn plan<'a>(&'a self, generator: &'a dyn Generator, realizations: u32, path: Path) -> Plan<'a> {
+    fn plan<'a>(
+        &'a self,
+        generator: &'a dyn Generator,
+        (realizations, years): (u32, usize),
+        path: Path,
+    ) -> Plan<'a> {
         Plan {
             lanes: &self.lanes,
             levels: self.levels,
@@ -57,33 +62,39 @@ impl Study {
             measures: &self.measures,
             generator,
             realizations,
+            years,
             path,
         }
     }
 
     fn run(&self, threads: usize, realizations: u32, path: Path) -> Seasons {
-        self.run_from(&self.generator(&self.record), threads, realizations, path)
+        self.run_from(&changed(&self.generator(&self.record)), threads, (realizations, 3), path)
     }
 
     pub(super) fn run_from(
         &self,
         from: &dyn Generator,
         threads: usize,
-        realizations: u32,
+        size: (u32, usize),
         path: Path,
     ) -> Seasons {
         let bins = SweBins::of_record(&self.lanes, &self.record).expect("a closed ledger");
         let pool = ThreadPoolBuilder::new().num_threads(threads).build().expect("threads");
-        pool.install(|| run(&self.plan(from, realizations, path), bins, &Silent)).expect("a closed ledger")
+        pool.install(|| run(&self.plan(from, size, path), bins, &Silent)).expect("a closed ledger")
     }
+}
+
+/// The same weather with an assumed change of mean precipitation.
+fn changed<'g>(generator: &'g YearBlocks<'_>) -> MeanChange<'g> {
+    MeanChange { generator, seed: generator.seed, standard_deviation_pct: 5.0 }
 }
 
 /// Another generator's realizations, no two years of one name: nothing of them can be remembered.
 struct EveryYearNew<'g>(&'g dyn Generator);
 
 impl Generator for EveryYearNew<'_> {
-    fn fill(&self, realization: u32, into: &mut Series) {
-        self.0.fill(realization, into);
+    fn fill(&self, realization: u32, years: usize, into: &mut Series) {
+        self.0.fill(realization, years, into);
         into.years.iter_mut().zip(0..).for_each(|(year, name)| year.water_year = name);
     }
 }
@@ -121,11 +132,12 @@ proptest! {
         let own = study.generator(&study.record);
         let records: Vec<Series> = (0..3).map(|number| own.resampled_record(number)).collect();
         let generators: Vec<YearBlocks<'_>> = records.iter().map(|record| study.generator(record)).collect();
-        let each: Vec<&dyn Generator> = generators.iter().map(|generator| generator as _).collect();
-        let plan = study.plan(&own, 5, Path::Widest);
+        let changed: Vec<MeanChange<'_>> = generators.iter().map(|generator| changed(generator)).collect();
+        let each: Vec<&dyn Generator> = changed.iter().map(|generator| generator as _).collect();
+        let plan = study.plan(&own, (5, 3), Path::Widest);
         let found = run_records(&plan, &each, &Silent).expect("a closed ledger");
         for (generator, found) in each.iter().zip(found) {
-            let alone: BasinSeasons = study.run_from(&EveryYearNew(*generator), 2, 5, Path::Widest).basin;
+            let alone: BasinSeasons = study.run_from(&EveryYearNew(*generator), 2, (5, 3), Path::Widest).basin;
             prop_assert_eq!(bits(&alone.years), bits(&found.years));
             prop_assert_eq!(bits(&alone.periods), bits(&found.periods));
         }
@@ -137,12 +149,12 @@ proptest! {
     fn years_that_are_drawn_twice_are_the_same_years(mut scenario in scenarios(), mean_c in -25.0..15.0) {
         scenario.climate.mean_c = mean_c;
         let study = Study::of(&scenario, &scenario.changes());
-        let changed = YearBlocks { years: 9, ..study.generator(&study.record) };
-        let unchanged = YearBlocks { mean_change_sd_pct: 0.0, ..changed };
+        let unchanged = study.generator(&study.record);
+        let changed = changed(&unchanged);
         let held = TemperatureHeld::new(&changed, &study.record);
         for generator in [&changed as &dyn Generator, &unchanged, &held] {
-            let found = study.run_from(generator, 2, 5, Path::Widest);
-            let every_year = study.run_from(&EveryYearNew(generator), 2, 5, Path::Widest);
+            let found = study.run_from(generator, 2, (5, 9), Path::Widest);
+            let every_year = study.run_from(&EveryYearNew(generator), 2, (5, 9), Path::Widest);
             prop_assert!(all_bits(&found) == all_bits(&every_year), "what is remembered differs");
         }
     }
@@ -154,8 +166,8 @@ proptest! {
         let study = Study::of(&scenario, &scenario.changes());
         let own = study.generator(&study.record);
         let (mut held, mut free) = (Series::default(), Series::default());
-        TemperatureHeld::new(&own, &study.record).fill(realization, &mut held);
-        own.fill(realization, &mut free);
+        TemperatureHeld::new(&own, &study.record).fill(realization, 3, &mut held);
+        own.fill(realization, 3, &mut free);
         let mean_c = |series: &Series, month: u8| {
             let days = series.mean_c.iter().zip(&series.month).filter(|(_, of)| **of == month);
             days.clone().map(|(mean_c, _)| mean_c).sum::<f64>() / days.count() as f64

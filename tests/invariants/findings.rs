@@ -9,7 +9,7 @@ use thawline::ensemble::Silent;
 use thawline::findings::{
     Crossing, Distribution, EXCEEDANCE_PCT, Findings, MeasureFindings, Questions, Runs, Spread, answer,
 };
-use thawline::perturb::YearBlocks;
+use thawline::perturb::{MeanChange, YearBlocks};
 use thawline::season::Kind;
 use thawline::snow::Path;
 
@@ -177,9 +177,9 @@ proptest! {
     fn amounts_are_found_from_their_single_years(scenario in scenarios()) {
         let changes = scenario.changes();
         let study = Study::of(&scenario, &changes);
-        let generator =
-            YearBlocks { record: &study.record, seed: 4, years: YEARS, mean_run_years: 2.0, mean_change_sd_pct: 9.0 };
-        let seasons = study.run_from(&generator, 2, REALIZATIONS, Path::Widest);
+        let blocks = YearBlocks { record: &study.record, seed: 4, mean_run_years: 2.0 };
+        let generator = MeanChange { generator: &blocks, seed: 4, standard_deviation_pct: 9.0 };
+        let seasons = study.run_from(&generator, 2, (REALIZATIONS, YEARS), Path::Widest);
         let levels_c = &LEVELS_C[..changes.len()];
         let bands = &scenario.basin.bands;
         let questions = Questions { levels_c, reference: 0, bands, mean_change_sd_pct: 9.0, seed: 4 };

@@ -4,7 +4,7 @@ use super::cases;
 use chrono::Datelike;
 use proptest::prelude::*;
 use thawline::calendar::{MonthDay, WaterYearStart};
-use thawline::perturb::{Generator, YearBlocks};
+use thawline::perturb::{Generator, MeanChange, YearBlocks};
 use thawline::weather::{Series, YearSpan};
 
 /// A record whose every day says which day it is: the mean temperature is the day's number in the record and the
@@ -30,13 +30,19 @@ fn labelled_record(follows: &[bool]) -> Series {
     series
 }
 
-fn blocks(record: &Series, seed: u64, mean_run_years: f64, mean_change_sd_pct: f64) -> YearBlocks<'_> {
-    YearBlocks { record, seed, years: 40, mean_run_years, mean_change_sd_pct }
+const YEARS: usize = 40;
+
+fn blocks(record: &Series, seed: u64, mean_run_years: f64) -> YearBlocks<'_> {
+    YearBlocks { record, seed, mean_run_years }
 }
 
-fn filled(generator: &YearBlocks<'_>, realization: u32) -> Series {
+fn changed<'g>(generator: &'g YearBlocks<'_>, standard_deviation_pct: f64) -> MeanChange<'g> {
+    MeanChange { generator, seed: generator.seed, standard_deviation_pct }
+}
+
+fn filled(generator: &dyn Generator, realization: u32) -> Series {
     let mut series = Series::default();
-    generator.fill(realization, &mut series);
+    generator.fill(realization, YEARS, &mut series);
     series
 }
 
@@ -52,30 +58,31 @@ proptest! {
     #[test]
     fn years_as_they_are(seed in any::<u64>(), number in any::<u32>()) {
         let record = labelled_record(&[true; 12]);
-        let generator = blocks(&record, seed, 3.0, 0.0);
-        let (drawn_from, years) = generator.drawn(number).expect("the record's own years");
+        let generator = blocks(&record, seed, 3.0);
+        let (drawn_from, years) = generator.drawn(number, YEARS).expect("the record's own years");
         let mut drawn = Series::default();
         for year in &years {
             drawn.push_year(drawn_from, year, !drawn.years.is_empty());
         }
         prop_assert_eq!(drawn, filled(&generator, number));
-        prop_assert!(blocks(&record, seed, 3.0, 10.0).drawn(number).is_none());
+        prop_assert!(changed(&generator, 0.0).drawn(number, YEARS).is_some());
+        prop_assert!(changed(&generator, 10.0).drawn(number, YEARS).is_none());
     }
 
     /// A realization is a function of seed and number: what was in the buffer and what was drawn before is forgotten.
     #[test]
     fn seed_and_number_alone(seed in any::<u64>(), number in any::<u32>(), others in any::<[u32; 3]>()) {
         let record = labelled_record(&[true; 12]);
-        let generator = blocks(&record, seed, 3.0, 10.0);
+        let generator = blocks(&record, seed, 3.0);
         let first = filled(&generator, number);
         let mut buffer = Series::default();
         for other in others {
-            generator.fill(other, &mut buffer);
+            generator.fill(other, YEARS, &mut buffer);
         }
-        generator.fill(number, &mut buffer);
+        generator.fill(number, YEARS, &mut buffer);
         prop_assert_eq!(&buffer, &first);
         prop_assert_ne!(order(&filled(&generator, number.wrapping_add(1))), order(&first));
-        prop_assert_ne!(order(&filled(&blocks(&record, seed ^ 1, 3.0, 10.0), number)), order(&first));
+        prop_assert_ne!(order(&filled(&blocks(&record, seed ^ 1, 3.0), number)), order(&first));
     }
 
     /// Every year of a realization is one whole year of the record, day by day, temperature with its own precipitation
@@ -83,7 +90,7 @@ proptest! {
     #[test]
     fn whole_years_of_the_record(seed in any::<u64>(), follows in prop::collection::vec(prop::bool::weighted(0.7), 1..15)) {
         let record = labelled_record(&follows);
-        let made = filled(&blocks(&record, seed, 2.5, 0.0), 0);
+        let made = filled(&blocks(&record, seed, 2.5), 0);
         prop_assert_eq!(made.years.len(), 40);
         for (number, year) in made.years.iter().enumerate() {
             let from = record.years.iter().find(|from| from.water_year == year.water_year);
@@ -104,8 +111,9 @@ proptest! {
     #[test]
     fn mean_change_keeps_the_order(seed in any::<u64>(), number in any::<u32>(), sd_pct in 1.0..30.0) {
         let record = labelled_record(&[true; 9]);
-        let plain = filled(&blocks(&record, seed, 3.0, 0.0), number);
-        let changed = filled(&blocks(&record, seed, 3.0, sd_pct), number);
+        let generator = blocks(&record, seed, 3.0);
+        let plain = filled(&generator, number);
+        let changed = filled(&changed(&generator, sd_pct), number);
         prop_assert_eq!(order(&plain), order(&changed));
         prop_assert_eq!(&plain.mean_c, &changed.mean_c);
         let factor = changed.precipitation_mm[0] / plain.precipitation_mm[0];
@@ -124,7 +132,7 @@ fn runs_end_at_gaps() {
     let names = order(&record);
     let mut after_gap = std::collections::BTreeSet::new();
     for number in 0..50 {
-        let made = order(&filled(&blocks(&record, 7, 1e12, 0.0), number));
+        let made = order(&filled(&blocks(&record, 7, 1e12), number));
         for pair in made.windows(2) {
             let at = names.iter().position(|name| *name == pair[0]).expect("a year of the record");
             match at {
@@ -148,7 +156,7 @@ fn runs_have_their_mean_length() {
     let names = order(&record);
     let (mut breaks, mut steps) = (0, 0);
     for number in 0..1000 {
-        let made = order(&filled(&blocks(&record, 11, 4.0, 0.0), number));
+        let made = order(&filled(&blocks(&record, 11, 4.0), number));
         for pair in made.windows(2) {
             let is_run = pair[1] == pair[0] + 1 || (pair[0] == names[199] && pair[1] == names[0]);
             steps += 1;

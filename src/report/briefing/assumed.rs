@@ -3,7 +3,7 @@
 use super::super::numbers::fixed;
 use super::super::reader::Reader;
 use super::super::study::Study;
-use crate::perturb::PrecipitationChange;
+use crate::perturb::{GeneratorChoice, PrecipitationChange};
 use crate::snow::{DegreeRule, PhaseRule};
 use crate::units::UnitSystem;
 use maud::{Markup, html};
@@ -39,7 +39,7 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
                 (precipitation_in_words(reader, &study.warming.precipitation))
                 @if let Some(global) = study.warming.global { "; levels of global warming stand as "
                     (fixed(global.local_per_global, 2)) " times what they add to the " (reader.difference(global.already_in_record_c)) " that the record already holds" } }
-            dt { "Realizations" } dd { "whole water years of the record in runs of " (fixed(study.mean_run_years, 1)) " years in the mean; the same realization under every level"
+            dt { "Realizations" } dd { (generator_in_words(study.generator)) "; the same realization under every level"
                 @match study.mean_change_sd_pct { Some(sd) => { "; mean precipitation changed at random, standard deviation " (fixed(sd, 1)) " % (an assumption)" } None => {} } }
         }
         h3 { "Defaults in force" }
@@ -49,6 +49,23 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
         @if !study.unlikely.is_empty() {
             h3 id=(SECOND_LOOK) { "Worth a second look" @if reader.units != UnitSystem::Metric { " (in the scenario's metric units)" } }
             ul { @for notice in study.unlikely { li { code { (notice.about) } ": " (notice.why) } } }
+        }
+    }
+}
+
+/// What makes the weather.
+fn generator_in_words(generator: GeneratorChoice) -> String {
+    match generator {
+        GeneratorChoice::YearBlocks { mean_run_years } => {
+            format!(
+                "whole water years of the record in runs of {} years in the mean",
+                fixed(mean_run_years, 1)
+            )
+        }
+        GeneratorChoice::MarkovGamma => {
+            "weather drawn day by day: a chain of wet and dry days, amounts and temperatures fitted to the record month by \
+             month, and years that vary as the record's"
+                .to_owned()
         }
     }
 }

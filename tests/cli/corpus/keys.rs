@@ -77,7 +77,7 @@ error: 'realizations.flavour', which is not a key of a scenario
   --> scenario.toml:22:1
    |
 22 | flavour = "plain"
-   | ^^^^^^^ expected one of: generator, mean_run_years, count, years, mean_change_sd_pct
+   | ^^^^^^^ expected one of: generator, mean_run_years, wet_day_mm, count, years, mean_change_sd_pct
    |
    = help: take it out, or check its table
 

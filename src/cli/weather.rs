@@ -1,0 +1,56 @@
+//! `thawline weather`: the station weather of one realization, as a study would run it at its reference.
+
+use super::arguments::Shared;
+use super::assemble::assemble;
+use super::failure::{Failure, may_be_replaced, unpublished};
+use super::output;
+use crate::perturb::MeanChange;
+use crate::report::{daily_manifest_json, publish, weather_csv};
+use crate::weather::Series;
+use std::io::{self, BufWriter, Write};
+use std::path::Path;
+
+/// Runs the command: to standard output, or into `weather.csv` of the folder that `--into` names.
+pub(super) fn run(path: &Path, realization: u32, shared: &Shared) -> Result<(), Failure> {
+    if shared.json {
+        return Err(Failure::CommandLine(
+            "--json is not for weather, whose output is a CSV table".to_owned(),
+        ));
+    }
+    let ready = assemble(path, shared)?;
+    let realizations = &ready.scenario.realizations;
+    if realization > realizations.count {
+        return Err(Failure::CommandLine(format!(
+            "--realization {realization}: the scenario has realizations 1 to {}",
+            realizations.count
+        )));
+    }
+    let recipe = ready.recipe();
+    let made = recipe.of(&ready.drawn_from);
+    let generator = MeanChange {
+        generator: &*made,
+        seed: recipe.seed,
+        standard_deviation_pct: realizations.mean_change_sd_pct.unwrap_or(0.0),
+    };
+    let mut weather = Series::default();
+    crate::perturb::Generator::fill(&generator, realization - 1, realizations.years, &mut weather);
+    let are_record_years = made.keeps_names();
+    if let Some(into) = &shared.into {
+        let mut table = Vec::new();
+        weather_csv(&weather, are_record_years, &mut table).map_err(|error| output::written(&error))?;
+        let command = format!("weather --realization {realization}");
+        let manifest =
+            daily_manifest_json(&ready.origin(&command, path, shared), &["weather.csv", "run.json"]);
+        let manifest = manifest.map_err(|error| Failure::Ours(error.to_string()))?;
+        may_be_replaced(into, "weather", shared)?;
+        let files = [("weather.csv".to_owned(), table), ("run.json".to_owned(), manifest)];
+        publish(&files, into).map_err(|error| unpublished(&error))?;
+        if !shared.quiet {
+            output::complain(&format!("weather table: {}\n", into.join("weather.csv").display()));
+        }
+        return Ok(());
+    }
+    let mut out = BufWriter::with_capacity(1 << 16, io::stdout().lock());
+    weather_csv(&weather, are_record_years, &mut out).map_err(|error| output::written(&error))?;
+    out.flush().map_err(|error| output::written(&error))
+}

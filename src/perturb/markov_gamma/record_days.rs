@@ -1,0 +1,89 @@
+//! The record as the generator is fitted to it: days of common years, wet or dry.
+
+use crate::calendar::{COMMON_DATES, days_of_common_dates};
+use crate::weather::Series;
+
+/// The smallest daily range that is taken a logarithm of, degC; thermometers are read to a tenth.
+const LEAST_RANGE_C: f64 = 0.1;
+
+/// One day of the record; 29 February is none.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct RecordDay {
+    /// Its place in the common year, from 0.
+    pub place: usize,
+    /// Month, 0 for January.
+    pub month: usize,
+    /// How many days before it are the calendar's own, one after another: 0, 1, or 2 for two and more.
+    pub linked: usize,
+    /// Precipitation, mm.
+    pub precipitation_mm: f64,
+    /// Whether precipitation lies above the wet-day threshold.
+    pub is_wet: bool,
+    /// Mean temperature, degC, and the natural logarithm of the daily range in degC.
+    pub temperature: [f64; 2],
+}
+
+/// The record's years, 365 days each.
+#[derive(Debug, Clone, PartialEq)]
+pub struct RecordDays {
+    /// The days, in order.
+    pub days: Vec<RecordDay>,
+    /// Of each year, whether it follows on the one before it in `days`.
+    pub follows: Vec<bool>,
+    /// Whether the record has daily ranges at all, and not the mean alone.
+    pub has_ranges: bool,
+}
+
+impl RecordDays {
+    /// Of a record whose years are corrected for catch.
+    pub fn of(record: &Series, wet_day_mm: f64) -> Self {
+        let mut days = Vec::with_capacity(record.years.len() * COMMON_DATES);
+        for year in &record.years {
+            let view = record.view(year);
+            let mut before = None;
+            for (place, day) in days_of_common_dates(year.first).enumerate() {
+                let day = day - 1;
+                let linked = match (before, days.last()) {
+                    (None, Some(last)) if year.follows => 1 + usize::from(linked_before(last) > 0),
+                    (Some(before), Some(last)) if before + 1 == day => {
+                        1 + usize::from(linked_before(last) > 0)
+                    }
+                    _ => 0,
+                };
+                before = Some(day);
+                let range_c = (2.0 * view.half_range_c[day]).max(LEAST_RANGE_C);
+                let precipitation_mm = view.precipitation_mm[day];
+                days.push(RecordDay {
+                    place,
+                    month: usize::from(view.month[day]),
+                    linked,
+                    precipitation_mm,
+                    is_wet: precipitation_mm > wet_day_mm,
+                    temperature: [view.mean_c[day], libm::log(range_c)],
+                });
+            }
+        }
+        Self {
+            days,
+            follows: record.years.iter().map(|year| year.follows).collect(),
+            has_ranges: record.half_range_c.iter().any(|half_range| *half_range > 0.0),
+        }
+    }
+
+    /// Days with the one before them, where the calendar links both.
+    pub fn pairs(&self) -> impl Iterator<Item = (&RecordDay, &RecordDay)> {
+        self.days.windows(2).filter(|pair| pair[1].linked > 0).map(|pair| (&pair[0], &pair[1]))
+    }
+
+    /// Days whose month lies at most `reach` months from `month`.
+    pub fn near(&self, month: usize, reach: usize) -> impl Iterator<Item = &RecordDay> {
+        self.days.iter().filter(move |day| {
+            let apart = day.month.abs_diff(month);
+            apart.min(12 - apart) <= reach
+        })
+    }
+}
+
+fn linked_before(day: &RecordDay) -> usize {
+    day.linked
+}
