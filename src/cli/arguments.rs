@@ -40,13 +40,13 @@ pub(super) enum Command {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
     },
-    /// Write the station weather of one realization, day by day, as CSV
+    /// Write station weather, day by day, as CSV: the record as realizations are made from it, or a realization
     Weather {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
-        /// Which realization, 1 the first
-        #[arg(long, value_name = "N", default_value_t = 1, value_parser = clap::value_parser!(u32).range(1..=100_000))]
-        realization: u32,
+        /// Which realization, 1 the first; the record itself if left out
+        #[arg(long, value_name = "N", value_parser = clap::value_parser!(u32).range(1..=100_000))]
+        realization: Option<u32>,
     },
     /// Read and check everything a study would use; write nothing
     Check {

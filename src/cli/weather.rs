@@ -1,17 +1,18 @@
-//! `thawline weather`: the station weather of one realization, as a study would run it at its reference.
+//! `thawline weather`: station weather as a study runs it before any warming: the record, corrected for catch and without
+//! gaps, or a realization.
 
 use super::arguments::Shared;
 use super::assemble::assemble;
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
-use crate::perturb::MeanChange;
+use crate::perturb::{Generator, MeanChange};
 use crate::report::{daily_manifest_json, publish, weather_csv};
 use crate::weather::Series;
 use std::io::{self, BufWriter, Write};
 use std::path::Path;
 
 /// Runs the command: to standard output, or into `weather.csv` of the folder that `--into` names.
-pub(super) fn run(path: &Path, realization: u32, shared: &Shared) -> Result<(), Failure> {
+pub(super) fn run(path: &Path, realization: Option<u32>, shared: &Shared) -> Result<(), Failure> {
     if shared.json {
         return Err(Failure::CommandLine(
             "--json is not for weather, whose output is a CSV table".to_owned(),
@@ -19,9 +20,9 @@ pub(super) fn run(path: &Path, realization: u32, shared: &Shared) -> Result<(), 
     }
     let ready = assemble(path, shared)?;
     let realizations = &ready.scenario.realizations;
-    if realization > realizations.count {
+    if let Some(number) = realization.filter(|number| *number > realizations.count) {
         return Err(Failure::CommandLine(format!(
-            "--realization {realization}: the scenario has realizations 1 to {}",
+            "--realization {number}: the scenario has realizations 1 to {}",
             realizations.count
         )));
     }
@@ -32,13 +33,19 @@ pub(super) fn run(path: &Path, realization: u32, shared: &Shared) -> Result<(), 
         seed: recipe.seed,
         standard_deviation_pct: realizations.mean_change_sd_pct.unwrap_or(0.0),
     };
-    let mut weather = Series::default();
-    crate::perturb::Generator::fill(&generator, realization - 1, realizations.years, &mut weather);
-    let are_record_years = made.keeps_names();
+    let (weather, are_record_years) = match realization {
+        None => (ready.drawn_from.clone(), true),
+        Some(number) => {
+            let mut weather = Series::default();
+            generator.fill(number - 1, realizations.years, &mut weather);
+            (weather, made.keeps_names())
+        }
+    };
     if let Some(into) = &shared.into {
         let mut table = Vec::new();
         weather_csv(&weather, are_record_years, &mut table).map_err(|error| output::written(&error))?;
-        let command = format!("weather --realization {realization}");
+        let number = realization.map_or(String::new(), |number| format!(" --realization {number}"));
+        let command = format!("weather{number}");
         let manifest =
             daily_manifest_json(&ready.origin(&command, path, shared), &["weather.csv", "run.json"]);
         let manifest = manifest.map_err(|error| Failure::Ours(error.to_string()))?;

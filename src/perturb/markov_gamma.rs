@@ -11,6 +11,7 @@ mod incomplete_gamma;
 mod lag_one;
 mod mixed_exponential;
 mod nest;
+mod normal_score;
 mod occurrence;
 mod record_days;
 mod scores;
@@ -48,9 +49,9 @@ impl MarkovGamma {
         let Recipe { seed, wet_day_mm, .. } = *recipe;
         let year = CommonYear::new(recipe.water_year_starts, recipe.cool_season_ends);
         let days = RecordDays::of(record, wet_day_mm);
-        let daily = Daily::of(&days, &year, wet_day_mm);
         let mut random = calibration_stream(seed);
-        let mut walk = Walk::default();
+        let daily = Daily::of(&days, &year, &mut random);
+        let mut walk = Walk::START;
         let mut drawn_year = || {
             let mut parts = vec![DrawnPart::default(); year.parts.len()];
             for (day, part) in year.part.iter().enumerate() {
@@ -60,7 +61,7 @@ impl MarkovGamma {
         };
         drawn_year();
         let drawn: Vec<Vec<DrawnPart>> = (0..CALIBRATION_YEARS).map(|_| drawn_year()).collect();
-        let nest = Nest::of(&year, wet_day_mm, &record_parts(&days, &year), &days.follows, &drawn);
+        let nest = Nest::of(&year, days.wet_above_mm, &record_parts(&days, &year), &days.follows, &drawn);
         Self { seed, year, daily, nest }
     }
 }
@@ -69,11 +70,11 @@ impl Generator for MarkovGamma {
     /// One year more is drawn and forgotten before the first, so that no realization begins on a day of no weather.
     fn fill(&self, realization: u32, years: usize, into: &mut Series) {
         let mut random = stream_after_mean_change(self.seed, realization);
-        let (mut walk, mut nest_walk) = (Walk::default(), NestWalk::default());
+        let (mut walk, mut nest_walk) = (Walk::START, NestWalk::default());
         let mut parts = vec![DrawnPart::default(); self.year.parts.len()];
         let mut changes = Vec::with_capacity(parts.len());
         let days = self.year.month.len();
-        let wet_day_mm = self.daily.wet_day_mm;
+        let wet_above_mm = self.daily.wet_above_mm;
         for number in 0..=years {
             if number <= 1 {
                 into.clear();
@@ -85,7 +86,7 @@ impl Generator for MarkovGamma {
                 parts[*part].add(&drawn);
                 into.mean_c.push(drawn.usual_c + self.nest.spread(*part) * drawn.departure_c);
                 into.half_range_c.push(drawn.half_range_c);
-                into.precipitation_mm.push(drawn.excess_mm.map_or(0.0, |excess_mm| wet_day_mm + excess_mm));
+                into.precipitation_mm.push(drawn.excess_mm.map_or(0.0, |excess_mm| wet_above_mm + excess_mm));
             }
             self.nest.year(&parts, &mut nest_walk, &mut changes);
             let weather = into.mean_c[start..].iter_mut().zip(&mut into.precipitation_mm[start..]);
@@ -93,7 +94,7 @@ impl Generator for MarkovGamma {
                 *mean_c += changes[*part].shift_c;
                 if *precipitation_mm > 0.0 {
                     *precipitation_mm =
-                        wet_day_mm + changes[*part].excess_factor * (*precipitation_mm - wet_day_mm);
+                        wet_above_mm + changes[*part].excess_factor * (*precipitation_mm - wet_above_mm);
                 }
             }
             into.month.extend_from_slice(&self.year.month);

@@ -1,15 +1,15 @@
-//! The weather table: one realization at the station, day by day, as every warming level begins from.
+//! The weather table: the record or a realization at the station, day by day, as every warming level begins from it.
 
 use crate::calendar::date_of;
 use crate::weather::Series;
 use chrono::Datelike;
 use std::io::{self, Write};
 
-/// Column names, in order. `year` counts the realization's years from 1; `water_year` is the record's year that the
+/// Column names, in order. `year` counts the years from 1; `water_year` is the record's year that the
 /// weather was taken from, and empty where it was drawn.
 const HEADER: &str = "year,day_of_water_year,month,day,water_year,tmin_c,tmax_c,tmean_c,precipitation_mm";
 
-/// Writes a realization; `are_record_years` tells whether its years are the record's. Numbers are written in the shortest
+/// Writes weather; `are_record_years` tells whether its years are the record's. Numbers are written in the shortest
 /// form that reads back exactly.
 ///
 /// # Errors

@@ -3,7 +3,6 @@
 use super::mixed_exponential::MixedExponential;
 use super::truncated_gamma::TruncatedGamma;
 use rand::Rng;
-use serde::Serialize;
 
 /// The law of a wet day's amount.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -12,16 +11,6 @@ pub enum Law {
     Gamma(TruncatedGamma),
     /// Mixed exponential above the threshold.
     MixedExponential(MixedExponential),
-}
-
-/// The kinds of law, as they are named.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
-#[serde(rename_all = "kebab-case")]
-pub enum LawName {
-    /// Gamma.
-    Gamma,
-    /// Mixed exponential.
-    MixedExponential,
 }
 
 impl Law {
@@ -37,14 +26,6 @@ impl Law {
                 Self::Gamma(gamma)
             }
             _ => Self::MixedExponential(mixed),
-        }
-    }
-
-    /// Its name.
-    pub fn name(&self) -> LawName {
-        match self {
-            Self::Gamma(_) => LawName::Gamma,
-            Self::MixedExponential(_) => LawName::MixedExponential,
         }
     }
 

@@ -2,6 +2,7 @@
 
 use super::amounts::Law;
 use super::common_year::CommonYear;
+use super::normal_score::Shape;
 use super::occurrence::Occurrence;
 use super::record_days::RecordDays;
 use super::temperature::Temperature;
@@ -11,29 +12,43 @@ use rand_distr::{Distribution, StandardNormal};
 /// A month with fewer wet days than this borrows amounts from its neighbours.
 const LEAST_AMOUNTS: usize = 30;
 
+/// Draws by which the quantiles of a month's amounts are known.
+const SAMPLED_AMOUNTS: usize = 2000;
+
 /// The chain's laws, day by day and month by month.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Daily {
     /// A day is wet whose precipitation lies above this, mm.
-    pub wet_day_mm: f64,
+    pub wet_above_mm: f64,
     /// Which days are wet.
     pub occurrence: Occurrence,
     /// How much falls on them, January first.
     pub laws: [Law; 12],
+    /// Their quantiles, by which an amount's normal score is known.
+    amounts: [Shape; 12],
     /// How warm they are.
     pub temperature: Temperature,
     /// Between which months' amounts each day draws, and the chance of the later one: amounts change without steps.
     between: Vec<([usize; 2], f64)>,
     month: Vec<u8>,
+    part: Vec<usize>,
 }
 
 /// Where the chain is.
-#[derive(Debug, Clone, Copy, Default)]
+#[derive(Debug, Clone, Copy)]
 pub struct Walk {
+    /// The part that it is in, and the odds of a wet day there.
+    part: usize,
+    odds: f64,
     /// `2 * was wet two days before + was wet the day before`.
     state: usize,
-    /// Departures of temperature and log range from the usual, in standard deviations.
-    departure: [f64; 2],
+    /// Normal scores of the departures of temperature and log range from the usual.
+    scores: [f64; 2],
+}
+
+impl Walk {
+    /// Before any day, after two dry ones of usual temperature.
+    pub const START: Self = Self { part: usize::MAX, odds: 1.0, state: 0, scores: [0.0; 2] };
 }
 
 /// A day of the chain.
@@ -51,7 +66,7 @@ pub struct DrawnDay {
 
 impl Daily {
     /// Fits the chain to a record.
-    pub fn of(record: &RecordDays, year: &CommonYear, wet_day_mm: f64) -> Self {
+    pub fn of(record: &RecordDays, year: &CommonYear, random: &mut impl Rng) -> Self {
         let law = |month: usize| {
             let mut amounts_mm: Vec<f64> = Vec::new();
             for reach in 0..=6 {
@@ -61,36 +76,47 @@ impl Daily {
                     break;
                 }
             }
-            Law::of(&amounts_mm, wet_day_mm)
+            Law::of(&amounts_mm, record.wet_above_mm)
         };
+        let laws: [Law; 12] = std::array::from_fn(law);
+        let amounts = laws.map(|law| Shape::of((0..SAMPLED_AMOUNTS).map(|_| law.draw(random))));
         Self {
-            wet_day_mm,
-            occurrence: Occurrence::of(record, year),
-            laws: std::array::from_fn(law),
-            temperature: Temperature::of(record, year),
+            wet_above_mm: record.wet_above_mm,
+            occurrence: Occurrence::of(record, year, random),
+            laws,
+            temperature: Temperature::of(record, year, &amounts),
+            amounts,
             between: year.between.clone(),
             month: year.month.clone(),
+            part: year.part.clone(),
         }
     }
 
     /// Draws the next day, whose place in the common year is `day`.
     pub fn next(&self, walk: &mut Walk, day: usize, random: &mut impl Rng) -> DrawnDay {
-        let is_wet = random.random::<f64>() < self.occurrence.chances[day][walk.state];
-        walk.state = 2 * (walk.state % 2) + usize::from(is_wet);
-        let excess_mm = is_wet.then(|| {
+        let part = self.part[day];
+        if part != walk.part {
+            walk.odds = self.occurrence.draw_odds(random);
+            walk.part = part;
+        }
+        let is_wet = self.occurrence.next(day, walk.odds, &mut walk.state, random);
+        let month = usize::from(self.month[day]);
+        let mut innovation: [f64; 2] = [StandardNormal.sample(random), StandardNormal.sample(random)];
+        let mut excess_mm = None;
+        if is_wet {
             let ([before, after], weight) = self.between[day];
-            let month = if random.random::<f64>() < weight { after } else { before };
-            self.laws[month].draw(random) - self.wet_day_mm
-        });
-        let innovation: [f64; 2] = [StandardNormal.sample(random), StandardNormal.sample(random)];
-        let memory = &self.temperature.memory[usize::from(self.month[day])];
-        walk.departure = memory.next(&walk.departure, &innovation);
+            let of = if random.random::<f64>() < weight { after } else { before };
+            let amount_mm = self.laws[of].draw(random);
+            let tie = self.temperature.with_amount[month];
+            innovation[0] =
+                tie * self.amounts[of].score(amount_mm) + libm::sqrt(1.0 - tie * tie) * innovation[0];
+            excess_mm = Some(amount_mm - self.wet_above_mm);
+        }
+        walk.scores = self.temperature.memory[month].next(&walk.scores, &innovation);
+        let [departure_c, of_log_range] = self.temperature.departures(day, month, is_wet, &walk.scores);
         let [mean, log_range] = self.temperature.usual[day][usize::from(is_wet)];
-        let half_range_c = if self.temperature.has_ranges {
-            0.5 * libm::exp(log_range.mean + log_range.spread * walk.departure[1])
-        } else {
-            0.0
-        };
-        DrawnDay { excess_mm, usual_c: mean.mean, departure_c: mean.spread * walk.departure[0], half_range_c }
+        let half_range_c =
+            if self.temperature.has_ranges { 0.5 * libm::exp(log_range.median + of_log_range) } else { 0.0 };
+        DrawnDay { excess_mm, usual_c: mean.median, departure_c, half_range_c }
     }
 }

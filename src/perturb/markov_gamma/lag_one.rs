@@ -1,4 +1,5 @@
 //! Vectors that remember the one before: the matrices of Matalas (1967).
+#![allow(clippy::needless_range_loop, reason = "matrices are written by their indices, as in print")]
 
 /// A square matrix.
 pub type Matrix<const N: usize> = [[f64; N]; N];

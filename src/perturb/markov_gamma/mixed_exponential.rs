@@ -36,31 +36,26 @@ impl MixedExponential {
         let mean = excess.iter().sum::<f64>() / excess.len() as f64;
         let mut at =
             Self { smaller_share: 0.5, smaller_mean_mm: 0.4 * mean, larger_mean_mm: 1.6 * mean, above_mm };
-        let mut likelihood = at.of_excess(&excess);
+        let mut likelihood = at.log_likelihood(&excess);
         for _ in 0..MOST_STEPS {
             let once = at.improved(&excess, mean);
             let twice = once.improved(&excess, mean);
             let leap = Self::of_free(extrapolated([at.free(), once.free(), twice.free()]), above_mm, mean);
             let leap = leap.improved(&excess, mean);
-            let [of_leap, of_twice] = [leap, twice].map(|candidate| candidate.of_excess(&excess));
+            let [of_leap, of_twice] = [leap, twice].map(|candidate| candidate.log_likelihood(&excess));
             let (next, reached) = if of_leap > of_twice { (leap, of_leap) } else { (twice, of_twice) };
             let gain = reached - likelihood;
             (at, likelihood) = (next, reached);
             // Not a number ends it as well.
-            if !(gain > SMALLEST_GAIN * excess.len() as f64) {
+            if gain.is_nan() || gain <= SMALLEST_GAIN * excess.len() as f64 {
                 break;
             }
         }
         (at.in_order(), likelihood)
     }
 
-    /// Log-likelihood of amounts above the threshold.
-    pub fn log_likelihood(&self, amounts_mm: &[f64]) -> f64 {
-        let excess: Vec<f64> = amounts_mm.iter().map(|amount| amount - self.above_mm).collect();
-        self.of_excess(&excess)
-    }
-
-    fn of_excess(&self, excess: &[f64]) -> f64 {
+    /// Log-likelihood of what lies above the threshold.
+    fn log_likelihood(&self, excess: &[f64]) -> f64 {
         excess.iter().map(|excess| self.densities(*excess)).map(|[a, b]| libm::log(a + b)).sum()
     }
 
@@ -141,7 +136,7 @@ fn extrapolated([first, second, third]: [[f64; 3]; 3]) -> [f64; 3] {
     }
     let square = |of: [f64; 3]| of[0] * of[0] + of[1] * of[1] + of[2] * of[2];
     let bends = square(bend);
-    if !(bends > 0.0) {
+    if bends.is_nan() || bends <= 0.0 {
         return third;
     }
     let length = -libm::sqrt(square(step) / bends);

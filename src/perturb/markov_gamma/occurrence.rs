@@ -1,7 +1,10 @@
 //! Which days are wet: a chain of wet and dry days of first or second order, month by month.
 
 use super::common_year::CommonYear;
-use super::record_days::RecordDays;
+use super::record_days::{RecordDay, RecordDays};
+use super::scores::Normal;
+use rand::{Rng, RngExt};
+use rand_distr::{Distribution, StandardNormal};
 
 /// How many days before it a day's chance of being wet hangs on.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -22,13 +25,26 @@ pub struct Occurrence {
     pub orders: [Order; 12],
     /// Chances of each day of the common year.
     pub chances: Vec<Chances>,
+    /// Standard deviation of a part's own draw, added to the logarithm of the odds of a wet day on all its days: months are
+    /// wet or dry as a whole more often than chains by themselves would have it.
+    pub spread: f64,
 }
+
+/// Years by which the chain's own variance of wet days is known.
+const TRIAL_YEARS: usize = 1000;
+/// The spread that is tried out.
+const TRIAL_SPREAD: f64 = 0.4;
+/// No part's odds are drawn with a larger one.
+const LARGEST_SPREAD: f64 = 1.0;
 
 impl Occurrence {
     /// For each month the order with the lower Bayesian information criterion `k ln n - 2 ln L` (Schwarz 1978; for chains
     /// Katz 1981), 2 chances or 4; both are held against the same days, those with two days before them. Chances pass from
     /// month to month without steps.
-    pub fn of(record: &RecordDays, year: &CommonYear) -> Self {
+    ///
+    /// The spread of the parts' odds makes up, in sum over the parts, for what their number of wet days varies more in the
+    /// record than in the chain: its square in proportion, from trials without one and with one.
+    pub fn of(record: &RecordDays, year: &CommonYear, random: &mut impl Rng) -> Self {
         let found: Vec<(Order, Chances)> = (0..12).map(|month| of_month(record, month)).collect();
         let mut chances = vec![[0.0; 4]; year.month.len()];
         for state in 0..4 {
@@ -44,8 +60,74 @@ impl Occurrence {
         for (order, (found, _)) in orders.iter_mut().zip(&found) {
             *order = *found;
         }
-        Self { orders, chances }
+        let mut found = Self { orders, chances, spread: 0.0 };
+        let in_record = variance_of_wet_days(&wet_days_of(record, year), year.parts.len());
+        let mut tried = |spread: f64| {
+            let tried = Self { spread, ..found.clone() };
+            let mut state = 0;
+            let counts = (0..TRIAL_YEARS).map(|_| tried.wet_days(year, &mut state, random));
+            variance_of_wet_days(&counts.collect::<Vec<_>>(), year.parts.len())
+        };
+        let [without, with] = [0.0, TRIAL_SPREAD].map(&mut tried);
+        if with > without {
+            let square = TRIAL_SPREAD * TRIAL_SPREAD * (in_record - without) / (with - without);
+            found.spread = libm::sqrt(square.max(0.0)).min(LARGEST_SPREAD);
+        }
+        found
     }
+
+    /// The odds of a wet day in a part, times the usual.
+    pub fn draw_odds(&self, random: &mut impl Rng) -> f64 {
+        let draw: f64 = StandardNormal.sample(random);
+        libm::exp(self.spread * draw)
+    }
+
+    /// Whether the next day is wet, and the state after it.
+    #[inline(always)]
+    pub fn next(&self, day: usize, odds: f64, state: &mut usize, random: &mut impl Rng) -> bool {
+        let chance = self.chances[day][*state];
+        let wet = odds * chance;
+        let is_wet = random.random::<f64>() * (wet + 1.0 - chance) < wet;
+        *state = 2 * (*state % 2) + usize::from(is_wet);
+        is_wet
+    }
+
+    /// Wet days of each part of a year of the chain.
+    fn wet_days(&self, year: &CommonYear, state: &mut usize, random: &mut impl Rng) -> Vec<f64> {
+        let mut counts = vec![0.0; year.parts.len()];
+        let (mut odds, mut last) = (1.0, usize::MAX);
+        for (day, part) in year.part.iter().enumerate() {
+            if *part != last {
+                odds = self.draw_odds(random);
+                last = *part;
+            }
+            if self.next(day, odds, state, random) {
+                counts[*part] += 1.0;
+            }
+        }
+        counts
+    }
+}
+
+/// Wet days of each part of the record's years.
+fn wet_days_of(record: &RecordDays, year: &CommonYear) -> Vec<Vec<f64>> {
+    let of_year = |days: &[RecordDay]| {
+        let mut counts = vec![0.0; year.parts.len()];
+        for day in days.iter().filter(|day| day.is_wet) {
+            counts[year.part[day.place]] += 1.0;
+        }
+        counts
+    };
+    record.days.chunks(year.month.len()).map(of_year).collect()
+}
+
+/// Sum over the parts of the variance of their wet days from year to year.
+fn variance_of_wet_days(counts: &[Vec<f64>], parts: usize) -> f64 {
+    let of_part = |part: usize| {
+        let spread = Normal::of(&counts.iter().map(|year| year[part]).collect::<Vec<_>>()).spread;
+        spread * spread
+    };
+    (0..parts).map(of_part).sum()
 }
 
 fn of_month(record: &RecordDays, month: usize) -> (Order, Chances) {

@@ -6,6 +6,11 @@ use crate::weather::Series;
 /// The smallest daily range that is taken a logarithm of, degC; thermometers are read to a tenth.
 const LEAST_RANGE_C: f64 = 0.1;
 
+/// Much less than a step of the gauge is less than this part of it.
+const MUCH_LESS: f64 = 0.75;
+/// A gauge has steps where at most one wet day in so many has much less than one.
+const MOST_WITH_LESS: usize = 100;
+
 /// One day of the record; 29 February is none.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct RecordDay {
@@ -30,24 +35,29 @@ pub struct RecordDays {
     pub days: Vec<RecordDay>,
     /// Of each year, whether it follows on the one before it in `days`.
     pub follows: Vec<bool>,
+    /// Wet days have more than this, mm: what the user states, or half of the smallest amount that the gauge can tell.
+    pub wet_above_mm: f64,
     /// Whether the record has daily ranges at all, and not the mean alone.
     pub has_ranges: bool,
 }
 
 impl RecordDays {
     /// Of a record whose years are corrected for catch.
+    ///
+    /// A gauge that tells steps of 2.54 mm makes readings of 2.54 mm of what lies between 1.27 and 3.81 mm: amounts are then
+    /// counted from half a step on, or laws of amounts would see a gap where the gauge is blind, and thin out the large days
+    /// to make up for it.
     pub fn of(record: &Series, wet_day_mm: f64) -> Self {
-        let mut days = Vec::with_capacity(record.years.len() * COMMON_DATES);
+        let wet_above_mm = half_step_mm(record, wet_day_mm).max(wet_day_mm);
+        let mut days: Vec<RecordDay> = Vec::with_capacity(record.years.len() * COMMON_DATES);
         for year in &record.years {
             let view = record.view(year);
             let mut before = None;
             for (place, day) in days_of_common_dates(year.first).enumerate() {
                 let day = day - 1;
                 let linked = match (before, days.last()) {
-                    (None, Some(last)) if year.follows => 1 + usize::from(linked_before(last) > 0),
-                    (Some(before), Some(last)) if before + 1 == day => {
-                        1 + usize::from(linked_before(last) > 0)
-                    }
+                    (None, Some(last)) if year.follows => 1 + usize::from(last.linked > 0),
+                    (Some(before), Some(last)) if before + 1 == day => 1 + usize::from(last.linked > 0),
                     _ => 0,
                 };
                 before = Some(day);
@@ -58,7 +68,7 @@ impl RecordDays {
                     month: usize::from(view.month[day]),
                     linked,
                     precipitation_mm,
-                    is_wet: precipitation_mm > wet_day_mm,
+                    is_wet: precipitation_mm > wet_above_mm,
                     temperature: [view.mean_c[day], libm::log(range_c)],
                 });
             }
@@ -66,13 +76,9 @@ impl RecordDays {
         Self {
             days,
             follows: record.years.iter().map(|year| year.follows).collect(),
+            wet_above_mm,
             has_ranges: record.half_range_c.iter().any(|half_range| *half_range > 0.0),
         }
-    }
-
-    /// Days with the one before them, where the calendar links both.
-    pub fn pairs(&self) -> impl Iterator<Item = (&RecordDay, &RecordDay)> {
-        self.days.windows(2).filter(|pair| pair[1].linked > 0).map(|pair| (&pair[0], &pair[1]))
     }
 
     /// Days whose month lies at most `reach` months from `month`.
@@ -84,6 +90,13 @@ impl RecordDays {
     }
 }
 
-fn linked_before(day: &RecordDay) -> usize {
-    day.linked
+/// Half of the smallest amount that the gauge tells, mm: the lower twentieth of all wet days, where hardly any day has much
+/// less. 0 where amounts have no such edge.
+fn half_step_mm(record: &Series, wet_day_mm: f64) -> f64 {
+    let wet = record.precipitation_mm.iter().copied().filter(|mm| *mm > wet_day_mm);
+    let mut sorted: Vec<f64> = wet.collect();
+    sorted.sort_by(f64::total_cmp);
+    let Some(step_mm) = sorted.get(sorted.len() / 20) else { return 0.0 };
+    let less = sorted.iter().take_while(|mm| **mm < MUCH_LESS * step_mm).count();
+    if less * MOST_WITH_LESS <= sorted.len() { step_mm / 2.0 } else { 0.0 }
 }

@@ -45,7 +45,7 @@ impl TruncatedGamma {
         let of = |log_shape: f64| {
             let shape = libm::exp(log_shape);
             let found = Self { shape, scale_mm: scale_of(shape, sample.mean, above_mm), above_mm };
-            (found, found.log_likelihood_of(sample))
+            (found, found.log_likelihood(sample))
         };
         let [low, high] = SHAPES.map(libm::log);
         let step = (high - low) / COARSE as f64;
@@ -55,15 +55,7 @@ impl TruncatedGamma {
         (found.0.share_above() >= LEAST_SHARE_ABOVE).then_some(found)
     }
 
-    /// Log-likelihood of amounts above the threshold.
-    pub fn log_likelihood(&self, amounts_mm: &[f64]) -> f64 {
-        let count = amounts_mm.len() as f64;
-        let mean = amounts_mm.iter().sum::<f64>() / count;
-        let mean_log = amounts_mm.iter().map(|amount| libm::log(*amount)).sum::<f64>() / count;
-        self.log_likelihood_of(Sample { count, mean, mean_log })
-    }
-
-    fn log_likelihood_of(&self, sample: Sample) -> f64 {
+    fn log_likelihood(&self, sample: Sample) -> f64 {
         let Self { shape, scale_mm, .. } = *self;
         let of_one = (shape - 1.0) * sample.mean_log
             - sample.mean / scale_mm
@@ -94,14 +86,14 @@ fn mean_above(shape: f64, above: f64) -> f64 {
     if share > 0.0 { shape * upper_share(shape + 1.0, above) / share } else { above + 1.0 }
 }
 
-/// The scale at which the mean above the threshold is that of the sample; bisection in its logarithm, to 1e-12.
+/// The scale at which the mean above the threshold is that of the sample, to 1e-13.
 fn scale_of(shape: f64, mean_mm: f64, above_mm: f64) -> f64 {
     let untruncated = mean_mm / shape;
     if above_mm <= 0.0 {
         return untruncated;
     }
-    // The mean above the threshold lies above the gamma's own, so the scale lies below that of the untruncated one; and
-    // it is at least the mean of an exponential tail where hardly anything is left above.
+    // The mean above the threshold lies above the gamma's own, so the scale lies below that of the untruncated one; far
+    // below it hardly anything is left above the threshold, and its mean is the threshold itself.
     let [mut low, mut high] = [libm::log(untruncated) - 20.0, libm::log(untruncated)];
     let excess = |log_scale: f64| {
         let scale = libm::exp(log_scale);
