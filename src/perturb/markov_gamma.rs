@@ -21,7 +21,7 @@ mod truncated_gamma;
 
 use super::mean_change::stream_after_mean_change;
 use super::stream::calibration_stream;
-use super::{Generator, Recipe};
+use super::{Fitted, FittedMonth, Generator, Recipe};
 use crate::weather::{Series, YearSpan};
 use common_year::CommonYear;
 use daily::{Daily, Walk};
@@ -103,5 +103,17 @@ impl Generator for MarkovGamma {
             let (water_year, follows) = (number as i32, number > 1);
             into.years.push(YearSpan { water_year, first, start, days, follows });
         }
+    }
+
+    fn fitted(&self) -> Option<Fitted> {
+        let Daily { wet_above_mm, occurrence, laws, .. } = &self.daily;
+        Some(Fitted {
+            wet_above_mm: *wet_above_mm,
+            months: std::array::from_fn(|month| FittedMonth {
+                chain_order: occurrence.orders[month],
+                amounts: laws[month].described(),
+            }),
+            wet_month_spread: occurrence.spread,
+        })
     }
 }

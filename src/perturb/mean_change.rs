@@ -1,7 +1,7 @@
 //! An assumed change of mean precipitation, one draw a realization (method, section 8).
 
-use super::Generator;
 use super::stream::stream;
+use super::{Fitted, Generator};
 use crate::weather::{Series, YearSpan};
 use rand::rngs::ChaCha8Rng;
 use rand_distr::{Distribution, StandardNormal};
@@ -32,6 +32,10 @@ impl Generator for MeanChange<'_> {
 
     fn drawn(&self, realization: u32, years: usize) -> Option<(&Series, Vec<YearSpan>)> {
         if self.standard_deviation_pct == 0.0 { self.generator.drawn(realization, years) } else { None }
+    }
+
+    fn fitted(&self) -> Option<Fitted> {
+        self.generator.fitted()
     }
 
     fn keeps_names(&self) -> bool {

@@ -1,5 +1,6 @@
 //! Perturbation: warming levels as monthly offsets and factors, and generators of weather that could have been.
 
+mod fitted;
 mod global;
 mod level;
 mod markov_gamma;
@@ -9,6 +10,7 @@ mod stream;
 mod temperature_held;
 mod year_blocks;
 
+pub use fitted::{AmountLaw, ChainOrder, Fitted, FittedMonth};
 pub use global::GlobalWarming;
 pub use level::{MonthlyChange, PrecipitationChange, StatedChange, Warming};
 pub use markov_gamma::MarkovGamma;
@@ -30,6 +32,11 @@ pub trait Generator: Sync {
     /// The record, and the years of it that realization number `realization` is, where it takes them as they are: then
     /// nothing need be filled, and years of one name have the same weather in every realization.
     fn drawn(&self, _realization: u32, _years: usize) -> Option<(&Series, Vec<YearSpan>)> {
+        None
+    }
+
+    /// What it took from its record month by month, where it fits anything.
+    fn fitted(&self) -> Option<Fitted> {
         None
     }
 

@@ -2,6 +2,7 @@
 
 use super::mixed_exponential::MixedExponential;
 use super::truncated_gamma::TruncatedGamma;
+use crate::perturb::AmountLaw;
 use rand::Rng;
 
 /// The law of a wet day's amount.
@@ -26,6 +27,19 @@ impl Law {
                 Self::Gamma(gamma)
             }
             _ => Self::MixedExponential(mixed),
+        }
+    }
+
+    /// Its kind and parameters.
+    pub fn described(&self) -> AmountLaw {
+        match *self {
+            Self::Gamma(TruncatedGamma { shape, scale_mm, .. }) => AmountLaw::Gamma { shape, scale_mm },
+            Self::MixedExponential(MixedExponential {
+                smaller_share,
+                smaller_mean_mm,
+                larger_mean_mm,
+                ..
+            }) => AmountLaw::MixedExponential { smaller_share, smaller_mean_mm, larger_mean_mm },
         }
     }
 

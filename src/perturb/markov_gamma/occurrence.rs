@@ -3,17 +3,9 @@
 use super::common_year::CommonYear;
 use super::record_days::{RecordDay, RecordDays};
 use super::scores::Normal;
+use crate::perturb::ChainOrder;
 use rand::{Rng, RngExt};
 use rand_distr::{Distribution, StandardNormal};
-
-/// How many days before it a day's chance of being wet hangs on.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub enum Order {
-    /// The day before.
-    First,
-    /// The two days before.
-    Second,
-}
 
 /// Chance of a wet day by what the two days before it were: `[2 * was wet two days before + was wet the day before]`.
 pub type Chances = [f64; 4];
@@ -22,7 +14,7 @@ pub type Chances = [f64; 4];
 #[derive(Debug, Clone, PartialEq)]
 pub struct Occurrence {
     /// The order that each month speaks for, January first.
-    pub orders: [Order; 12],
+    pub orders: [ChainOrder; 12],
     /// Chances of each day of the common year.
     pub chances: Vec<Chances>,
     /// Standard deviation of a part's own draw, added to the logarithm of the odds of a wet day on all its days: months are
@@ -45,7 +37,7 @@ impl Occurrence {
     /// The spread of the parts' odds makes up, in sum over the parts, for what their number of wet days varies more in the
     /// record than in the chain: its square in proportion, from trials without one and with one.
     pub fn of(record: &RecordDays, year: &CommonYear, random: &mut impl Rng) -> Self {
-        let found: Vec<(Order, Chances)> = (0..12).map(|month| of_month(record, month)).collect();
+        let found: Vec<(ChainOrder, Chances)> = (0..12).map(|month| of_month(record, month)).collect();
         let mut chances = vec![[0.0; 4]; year.month.len()];
         for state in 0..4 {
             let mut monthly = [0.0; 12];
@@ -56,7 +48,7 @@ impl Occurrence {
                 chances[state] = value.clamp(0.0, 1.0);
             }
         }
-        let mut orders = [Order::First; 12];
+        let mut orders = [ChainOrder::First; 12];
         for (order, (found, _)) in orders.iter_mut().zip(&found) {
             *order = *found;
         }
@@ -130,7 +122,7 @@ fn variance_of_wet_days(counts: &[Vec<f64>], parts: usize) -> f64 {
     (0..parts).map(of_part).sum()
 }
 
-fn of_month(record: &RecordDays, month: usize) -> (Order, Chances) {
+fn of_month(record: &RecordDays, month: usize) -> (ChainOrder, Chances) {
     // Dry and wet days by what the two days before them were.
     let mut counts = [[0.0; 2]; 4];
     // The same by the day before alone, with days that have but that one before them.
@@ -158,10 +150,10 @@ fn of_month(record: &RecordDays, month: usize) -> (Order, Chances) {
                 *chance = first_order[state % 2];
             }
         }
-        (Order::Second, chances)
+        (ChainOrder::Second, chances)
     } else {
         let [dry, wet] = first_order;
-        (Order::First, [dry, wet, dry, wet])
+        (ChainOrder::First, [dry, wet, dry, wet])
     }
 }
 
