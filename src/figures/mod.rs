@@ -6,6 +6,7 @@
 mod apart;
 mod axes;
 mod backend;
+mod generator_sheet;
 mod headline;
 mod labels;
 mod marks;
@@ -65,10 +66,12 @@ pub enum Part {
     Volumes,
     /// What is it drawn from?
     Record,
+    /// Does the weather that was made look like it?
+    Weather,
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 7] = [
+pub const FIGURES: [Figure; 8] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
@@ -76,6 +79,7 @@ pub const FIGURES: [Figure; 7] = [
     window_volume::FIGURE,
     record_years::FIGURE,
     record_precipitation::FIGURE,
+    generator_sheet::FIGURE,
 ];
 
 /// A figure of which there is one a site with observed snow.
