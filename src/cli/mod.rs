@@ -9,6 +9,7 @@ mod failure;
 mod generator_sheet;
 mod input;
 mod last_words;
+mod level_groups;
 mod output;
 mod own_years;
 mod pool;

@@ -6,6 +6,7 @@ mod corpus;
 mod data_faults;
 mod generator_sheet;
 mod identities;
+mod intensity;
 mod interrupt;
 mod keys;
 mod normal;
