@@ -7,6 +7,7 @@ mod realization;
 mod record;
 mod run;
 mod seasons;
+mod survey_swe;
 mod swe_days;
 mod watch;
 
@@ -15,5 +16,6 @@ pub use plan::Plan;
 pub use record::{RecordRun, RecordYear};
 pub use run::{run, run_records};
 pub use seasons::{BasinSeasons, Seasons};
+pub use survey_swe::SurveySwe;
 pub use swe_days::{COUNTED_DAYS, SweBins, SweDays};
 pub use watch::{Halt, Silent, Watch};

@@ -8,6 +8,7 @@ mod chance;
 mod crossing;
 mod distribution;
 mod exceedance;
+mod generator_sheet;
 mod measure;
 mod normal;
 mod odds;
@@ -31,6 +32,10 @@ pub use chance::{Chance, Chances};
 pub use crossing::{Crossing, CrossingRange, crossing};
 pub use distribution::{DOTS, Distribution};
 pub use exceedance::{EXCEEDANCE_PCT, Exceeded};
+pub use generator_sheet::{
+    GeneratorSheet, LargestDay, Period, Quantity, REALIZATIONS_OF_THE_SHEET, RealizationRange, SheetLine,
+    SheetQuestions, SheetSample, SheetStatistic, Statistic, Subject, Verdict,
+};
 pub use measure::{LevelFindings, MeasureFindings};
 pub use normal::{
     CLASS_LIMITS_PCT, LevelPercents, MedianSwe, NormalQuestions, PercentOfMedian, UNSTABLE_BELOW_SHARE,
