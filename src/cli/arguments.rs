@@ -52,6 +52,9 @@ pub(super) enum Command {
     Check {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
+        /// Make the weather of realizations, too, and hold the record against it
+        #[arg(long)]
+        weather: bool,
     },
     /// Write the demo scenarios and their invented data
     Start {

@@ -3,21 +3,28 @@
 use super::arguments::Shared;
 use super::assemble::{Ready, assemble};
 use super::failure::Failure;
+use super::generator_sheet::{generator_sheet, realizations_of_the_sheet};
 use super::output;
+use super::pool::in_pool;
+use super::progress::{Progress, mind_interrupts};
+use super::runs::halted;
 use crate::baseline::Seasons;
-use crate::ensemble::{BandClimate, WinterMonths, band_climates};
+use crate::ensemble::{BandClimate, Watch, WinterMonths, band_climates};
+use crate::findings::GeneratorSheet;
 use crate::perturb::MonthlyChange;
 use crate::report::Checked;
+use crate::report::numbers::counted;
 use std::path::Path;
 
-/// Runs the command.
-pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
+/// Runs the command; with the generator sheet, if it is asked for.
+pub(super) fn run(path: &Path, with_sheet: bool, shared: &Shared) -> Result<(), Failure> {
     let ready = assemble(path, shared)?;
     let seasons = Seasons::of(&ready.weather, ready.scenario.season.survey_dates[0]);
     let winter = WinterMonths::of(ready.basin.is_southern());
     let climates = band_climates(&ready.lanes(&[MonthlyChange::NONE]), &ready.weather, winter)
         .map_err(|open| Failure::Ours(open.to_string()))?;
-    let checked = describe(&ready, &seasons, &climates);
+    let sheet = if with_sheet { Some(sheet(&ready, shared)?) } else { None };
+    let checked = describe(&ready, &seasons, &climates, sheet.as_ref());
     if shared.json {
         return output::print_json(&checked.document());
     }
@@ -27,7 +34,28 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     output::print(checked.words().as_bytes())
 }
 
-fn describe<'a>(ready: &'a Ready, seasons: &'a Seasons, climates: &'a [BandClimate]) -> Checked<'a> {
+/// Makes the weather of realizations and holds the record against it.
+fn sheet(ready: &Ready, shared: &Shared) -> Result<GeneratorSheet, Failure> {
+    let progress = Progress::new(shared);
+    mind_interrupts();
+    let realizations = realizations_of_the_sheet(ready);
+    progress.stage(&format!(
+        "making the weather of {} of {} and holding the record against it",
+        counted(realizations as usize, "realization"),
+        counted(ready.drawn_from.years.len(), "year")
+    ));
+    progress.begins(realizations);
+    let sheet = in_pool(shared, || generator_sheet(ready, &progress))?;
+    progress.ends();
+    sheet.map_err(halted)
+}
+
+fn describe<'a>(
+    ready: &'a Ready,
+    seasons: &'a Seasons,
+    climates: &'a [BandClimate],
+    generator: Option<&'a GeneratorSheet>,
+) -> Checked<'a> {
     let scenario = &ready.scenario;
     Checked {
         title: &scenario.title,
@@ -57,5 +85,6 @@ fn describe<'a>(ready: &'a Ready, seasons: &'a Seasons, climates: &'a [BandClima
             .map(|default| (default.key.as_str(), default.value.as_str()))
             .collect(),
         unlikely: &ready.unlikely,
+        generator,
     }
 }

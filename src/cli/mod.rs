@@ -6,10 +6,12 @@ mod break_even;
 mod check;
 mod daily;
 mod failure;
+mod generator_sheet;
 mod input;
 mod last_words;
 mod output;
 mod own_years;
+mod pool;
 mod progress;
 mod runs;
 mod start;
@@ -34,7 +36,7 @@ pub fn run() -> u8 {
         Command::Study { scenario } => study::run(&scenario, &shared),
         Command::Daily { scenario } => daily::run(&scenario, &shared),
         Command::Weather { scenario, realization } => weather::run(&scenario, realization, &shared),
-        Command::Check { scenario } => check::run(&scenario, &shared),
+        Command::Check { scenario, weather } => check::run(&scenario, weather, &shared),
         Command::Start { folder } => start::run(&folder, &shared),
     };
     match result {

@@ -44,11 +44,16 @@ impl Progress {
         Self { show, bar: OnceLock::new() }
     }
 
-    /// Says that a stage begins.
-    pub fn stage(&self, text: &str) {
+    /// Takes the bar away.
+    pub fn ends(&self) {
         if let Some(bar) = self.bar.get() {
             bar.finish_and_clear();
         }
+    }
+
+    /// Says that a stage begins.
+    pub fn stage(&self, text: &str) {
+        self.ends();
         if !matches!(self.show, Show::Nothing) {
             complain(&format!("{text}\n"));
         }

@@ -3,6 +3,7 @@
 use super::assemble::Ready;
 use super::break_even::break_even;
 use super::failure::Failure;
+use super::generator_sheet::{generator_sheet, realizations_of_the_sheet};
 use super::progress::Progress;
 use crate::ensemble::{BasinSeasons, Halt, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
@@ -16,7 +17,7 @@ use crate::weather::Series;
 
 /// Runs every realization under every level; the reference once more with temperatures held, and for every change of
 /// mean precipitation that stands beside the assumed one; and some realizations from each of a number of resampled
-/// records, under every level. The same streams throughout, so that all differences are paired.
+/// records, under every level; and the weather alone of realizations as long as the record, to hold it against that. The same streams throughout, so that all differences are paired.
 pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findings, Failure> {
     let scenario = &ready.scenario;
     let (warming, realizations) = (&scenario.warming, &scenario.realizations);
@@ -41,7 +42,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let times_assumed: &[f64] = if mean_change_sd_pct > 0.0 { &TIMES_ASSUMED } else { &[] };
     let of_a_record = realizations.count.min(REALIZATIONS_OF_A_RECORD);
     let times = times_assumed.len() as u32 + 2;
-    progress.begins(realizations.count * times + of_a_record);
+    progress.begins(realizations.count * times + of_a_record + realizations_of_the_sheet(ready));
 
     let bins = SweBins::of_record(&lanes, &ready.drawn_from).map_err(open)?;
     let study = run(&plan, bins, progress).map_err(halted)?;
@@ -69,6 +70,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         Refit::of(&seasons, ready.drawn_from.years.len(), &warming.levels_c, warming.reference)
     };
     let refits: Vec<Refit> = of_records.map(refit).collect();
+    let generator_sheet = generator_sheet(ready, progress).map_err(halted)?;
 
     // Only a warmer level has something to be made up for.
     let break_even = if warming.reference + 1 < warming.levels_c.len() {
@@ -90,7 +92,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     };
     let findings = answer(&runs, &questions, progress).map_err(halted)?;
     let comparisons = ready.comparisons().map_err(open)?;
-    Ok(Findings { break_even, comparisons, ..findings })
+    Ok(Findings { break_even, comparisons, generator: Some(generator_sheet), ..findings })
 }
 
 /// Watches for the wish to stop alone: runs that are too many and too short to count on a bar.
@@ -106,7 +108,7 @@ fn open(open: OpenLedger) -> Failure {
     Failure::Ours(open.to_string())
 }
 
-fn halted(halt: Halt) -> Failure {
+pub(super) fn halted(halt: Halt) -> Failure {
     match halt {
         Halt::Stopped => Failure::Interrupted,
         Halt::Ledger(ledger) => open(ledger),

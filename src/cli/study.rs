@@ -5,6 +5,7 @@ use super::assemble::{Ready, assemble};
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::own_years::own_years;
+use super::pool::in_pool;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
 use super::runs;
 use crate::ensemble::RecordYear;
@@ -92,14 +93,6 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         ));
     }
     Ok(())
-}
-
-/// Runs a piece of work on the number of threads that was asked for.
-fn in_pool<T: Send>(shared: &Shared, work: impl FnOnce() -> T + Send) -> Result<T, Failure> {
-    let threads = shared.threads.map_or(0, usize::from);
-    let pool = rayon::ThreadPoolBuilder::new().num_threads(threads).build();
-    let pool = pool.map_err(|error| Failure::Ours(format!("cannot start threads: {error}")))?;
-    Ok(pool.install(work))
 }
 
 fn describe<'a>(

@@ -28,7 +28,7 @@ impl SurveySwe<'_> {
         self.of(&mut Engine::new(self.lanes, false), record)
     }
 
-    /// Makes realizations on the threads of the current rayon pool, runs each, and gives what `look` makes of its weather and
+    /// Makes realizations of so many years on the threads of the current rayon pool, runs each, and gives what `look` makes of its weather and
     /// of the SWE on the survey date of its years, mm, in the order of their numbers. Each depends on its number alone, so
     /// that any number of threads gives the same bits.
     ///
@@ -38,6 +38,7 @@ impl SurveySwe<'_> {
         &self,
         generator: &dyn Generator,
         realizations: u32,
+        years: usize,
         watch: &dyn Watch,
         look: impl Fn(&Series, &[f64]) -> T + Sync,
     ) -> Result<Vec<T>, Halt> {
@@ -49,7 +50,7 @@ impl SurveySwe<'_> {
                     if watch.wants_stop() {
                         return Err(Halt::Stopped);
                     }
-                    generator.fill(number, weather);
+                    generator.fill(number, years, weather);
                     let seen = look(weather, &self.of(engine, weather)?);
                     watch.realization_done();
                     Ok(seen)

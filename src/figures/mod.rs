@@ -65,6 +65,8 @@ pub enum Part {
     Volumes,
     /// What is it drawn from?
     Record,
+    /// Does the weather that was made look like it?
+    Weather,
 }
 
 /// Every figure, in the order in which a reader meets them.

@@ -1,6 +1,7 @@
 //! Puts every question to a study's runs, measure by measure, for the basin and for each band.
 
 use super::break_even::BreakEven;
+use super::generator_sheet::GeneratorSheet;
 use super::measure::{Asked, Found, MeasureFindings};
 use super::record::RecordFindings;
 use super::record_range::{RecordRange, Refit};
@@ -75,6 +76,9 @@ pub struct Findings {
     /// The model against observed snow, one entry a site. No ensemble is asked for it: whoever has it adds it.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub comparisons: Vec<Comparison>,
+    /// Whether the weather that was made looks like the record. Found by runs of its own.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub generator: Option<GeneratorSheet>,
     /// The record's own years. No ensemble is asked for them either.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub record: Option<RecordFindings>,
@@ -133,6 +137,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         basin,
         bands: bands.collect(),
         comparisons: Vec::new(),
+        generator: None,
         record: None,
     })
 }

@@ -3,6 +3,7 @@
 mod answer;
 mod assumed;
 mod elevation;
+mod generator_sheet;
 mod levels;
 mod normal;
 mod observed;
@@ -13,6 +14,7 @@ mod volumes;
 mod yardsticks;
 
 use super::answer::Answer;
+use super::generator_sheet::snow_mismatch;
 use super::numbers::counted;
 use super::study::Study;
 use super::{cautions, terms};
@@ -59,6 +61,10 @@ pub fn briefing_html(
                             "read how far it is from " a href=(format!("#{}", observed::ADDRESS)) { "what was observed" } " before you rely on any number here."
                         }
                     }
+                    @if let Some(mismatch) = findings.generator.as_ref().and_then(|sheet| snow_mismatch(sheet, study.reader)) {
+                        p.notice { (mismatch) " All that follows is of weather that was made: "
+                            a href=(format!("#{}", generator_sheet::ADDRESS)) { "see how near it comes to the record" } "." }
+                    }
                     @if !study.unlikely.is_empty() {
                         p.notice { (counted(study.unlikely.len(), "thing")) " about the input " (if study.unlikely.len() == 1 { "is" } else { "are" })
                             " " a href=(format!("#{}", assumed::SECOND_LOOK)) { "worth a second look" } "." }
@@ -71,6 +77,7 @@ pub fn briefing_html(
                     (volumes::section(study, &figures))
                     (yardsticks::section(study, answer))
                     (record::section(study, &figures))
+                    (generator_sheet::section(study, &figures))
                     (normal::section(study))
                     (observed::section(study, of_sites))
                     (assumed::section(study))

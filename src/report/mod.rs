@@ -5,6 +5,7 @@ mod briefing;
 mod cautions;
 mod checked;
 mod daily;
+mod generator_sheet;
 mod json;
 mod normal;
 pub mod numbers;

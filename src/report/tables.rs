@@ -4,6 +4,7 @@
 
 mod break_even;
 mod cells;
+mod generator_sheet;
 mod measures;
 mod record_range;
 mod record_years;
@@ -33,6 +34,9 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
         add("break-even", break_even::break_even(found, units));
     }
     add("swe-through-year", through_year::through_year(&findings.swe_through_year, study.reader));
+    if let Some(sheet) = &findings.generator {
+        add("generator-sheet", generator_sheet::generator_sheet(sheet, units));
+    }
     add("record-years", record_years::record_years(study));
     tables.extend(normal_tables(study));
     tables.extend(observed_tables(&findings.comparisons, units));

@@ -20,6 +20,17 @@ pub enum Verdict {
     Above,
 }
 
+impl Verdict {
+    /// `within`, `below`, `above`.
+    pub fn words(self) -> &'static str {
+        match self {
+            Self::Within => "within",
+            Self::Below => "below",
+            Self::Above => "above",
+        }
+    }
+}
+
 /// The realizations' range, 5 %, 50 % and 95 %.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct RealizationRange {

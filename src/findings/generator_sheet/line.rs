@@ -4,8 +4,7 @@ use crate::calendar::{MONTHS, MonthDay};
 use serde::{Serialize, Serializer};
 
 /// What a statistic is about; statistics of one subject stand together.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
-#[serde(rename_all = "snake_case")]
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub enum Subject {
     /// SWE on the first survey date, modelled at the reference.
     SurveySwe,
@@ -35,8 +34,21 @@ impl Subject {
         Self::PrecipitationWithTemperature,
     ];
 
-    /// Its name: `1 April SWE`.
-    pub fn name(self, survey: MonthDay) -> String {
+    /// Its name in tables.
+    pub fn name(self) -> &'static str {
+        match self {
+            Self::SurveySwe => "survey_swe",
+            Self::MonthlyPrecipitation => "monthly_precipitation",
+            Self::WetDays => "wet_days",
+            Self::Totals => "precipitation_totals",
+            Self::DailyMinimum => "daily_minimum",
+            Self::DailyMaximum => "daily_maximum",
+            Self::PrecipitationWithTemperature => "precipitation_with_temperature",
+        }
+    }
+
+    /// Its name in words: `1 April SWE`.
+    pub fn words(self, survey: MonthDay) -> String {
         match self {
             Self::SurveySwe => format!("{} SWE", survey.words()),
             Self::MonthlyPrecipitation => "precipitation of months".to_owned(),
@@ -46,6 +58,12 @@ impl Subject {
             Self::DailyMaximum => "daily maximum temperature".to_owned(),
             Self::PrecipitationWithTemperature => "precipitation with temperature".to_owned(),
         }
+    }
+}
+
+impl Serialize for Subject {
+    fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
+        serializer.serialize_str(self.name())
     }
 }
 
@@ -92,17 +110,21 @@ impl Period {
             Self::WaterYear => "water year",
         }
     }
+
+    /// Its name in tables: `january`, `cool_season`.
+    pub fn name(self) -> String {
+        self.words().to_lowercase().replace(' ', "_")
+    }
 }
 
 impl Serialize for Period {
     fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
-        serializer.serialize_str(&self.words().to_lowercase().replace(' ', "_"))
+        serializer.serialize_str(&self.name())
     }
 }
 
 /// A statistic of one series of weather and of the snow that it brings.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
-#[serde(rename_all = "snake_case")]
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub enum Statistic {
     /// Mean over years.
     SweMean,
@@ -154,66 +176,95 @@ pub enum Statistic {
     Correlation,
 }
 
+/// What there is to know of a statistic.
+struct Known {
+    subject: Subject,
+    quantity: Quantity,
+    name: &'static str,
+    words: &'static str,
+}
+
 impl Statistic {
+    fn known(self) -> Known {
+        use Quantity::{Correlation, Days, DepthMm, DifferenceC, Share, TemperatureC, Years};
+        use Subject::{
+            DailyMaximum, DailyMinimum, MonthlyPrecipitation, PrecipitationWithTemperature, SurveySwe,
+            Totals, WetDays,
+        };
+        let known = |subject, quantity, name, words| Known { subject, quantity, name, words };
+        match self {
+            Self::SweMean => known(SurveySwe, DepthMm, "survey_swe_mean", "mean"),
+            Self::SweDeviation => {
+                known(SurveySwe, DepthMm, "survey_swe_standard_deviation", "standard deviation")
+            }
+            Self::SweLow => known(SurveySwe, DepthMm, "survey_swe_q10", "10 % quantile"),
+            Self::SweMedian => known(SurveySwe, DepthMm, "survey_swe_q50", "median"),
+            Self::SweHigh => known(SurveySwe, DepthMm, "survey_swe_q90", "90 % quantile"),
+            Self::MonthMean => known(MonthlyPrecipitation, DepthMm, "month_mean", "mean"),
+            Self::MonthDeviation => {
+                known(MonthlyPrecipitation, DepthMm, "month_standard_deviation", "standard deviation")
+            }
+            Self::WetShare => known(WetDays, Share, "wet_day_share", "share of days that are wet"),
+            Self::WetSpell => known(WetDays, Days, "wet_spell_mean_length", "mean length of wet spells"),
+            Self::DrySpell => known(WetDays, Days, "dry_spell_mean_length", "mean length of dry spells"),
+            Self::LongestDrySpell => {
+                known(WetDays, Days, "longest_dry_spell_mean", "longest dry spell of a year")
+            }
+            Self::WetMean => known(WetDays, DepthMm, "wet_day_mean", "mean of wet days"),
+            Self::WetHigh => known(WetDays, DepthMm, "wet_day_q95", "95 % quantile of wet days"),
+            Self::LargestDay => known(WetDays, DepthMm, "largest_day_mean", "largest day of a year"),
+            Self::TotalMean => known(Totals, DepthMm, "total_mean", "mean"),
+            Self::TotalDeviation => known(Totals, DepthMm, "total_standard_deviation", "standard deviation"),
+            Self::TotalLag1 => {
+                known(Totals, Correlation, "total_lag1_correlation", "correlation with the year before")
+            }
+            Self::DryRun => known(Totals, Years, "dry_years_in_succession", "longest run of dry years"),
+            Self::MinimumMean => known(DailyMinimum, TemperatureC, "tmin_mean", "mean"),
+            Self::MinimumDeviation => {
+                known(DailyMinimum, DifferenceC, "tmin_standard_deviation", "standard deviation")
+            }
+            Self::MaximumMean => known(DailyMaximum, TemperatureC, "tmax_mean", "mean"),
+            Self::MaximumDeviation => {
+                known(DailyMaximum, DifferenceC, "tmax_standard_deviation", "standard deviation")
+            }
+            Self::WetLessDry => known(
+                PrecipitationWithTemperature,
+                DifferenceC,
+                "wet_less_dry_temperature",
+                "wet days less dry days",
+            ),
+            Self::Correlation => known(
+                PrecipitationWithTemperature,
+                Correlation,
+                "precipitation_temperature_correlation",
+                "correlation over years",
+            ),
+        }
+    }
+
     /// What it is about.
     pub fn subject(self) -> Subject {
-        match self {
-            Self::SweMean | Self::SweDeviation | Self::SweLow | Self::SweMedian | Self::SweHigh => {
-                Subject::SurveySwe
-            }
-            Self::MonthMean | Self::MonthDeviation => Subject::MonthlyPrecipitation,
-            Self::WetShare
-            | Self::WetSpell
-            | Self::DrySpell
-            | Self::LongestDrySpell
-            | Self::WetMean
-            | Self::WetHigh
-            | Self::LargestDay => Subject::WetDays,
-            Self::TotalMean | Self::TotalDeviation | Self::TotalLag1 | Self::DryRun => Subject::Totals,
-            Self::MinimumMean | Self::MinimumDeviation => Subject::DailyMinimum,
-            Self::MaximumMean | Self::MaximumDeviation => Subject::DailyMaximum,
-            Self::WetLessDry | Self::Correlation => Subject::PrecipitationWithTemperature,
-        }
+        self.known().subject
     }
 
     /// What its numbers count.
     pub fn quantity(self) -> Quantity {
-        match self {
-            Self::WetShare => Quantity::Share,
-            Self::WetSpell | Self::DrySpell | Self::LongestDrySpell => Quantity::Days,
-            Self::DryRun => Quantity::Years,
-            Self::MinimumMean | Self::MaximumMean => Quantity::TemperatureC,
-            Self::MinimumDeviation | Self::MaximumDeviation | Self::WetLessDry => Quantity::DifferenceC,
-            Self::TotalLag1 | Self::Correlation => Quantity::Correlation,
-            _ => Quantity::DepthMm,
-        }
+        self.known().quantity
+    }
+
+    /// Its name in tables.
+    pub fn name(self) -> &'static str {
+        self.known().name
     }
 
     /// What it is, beside its subject's name.
     pub fn words(self) -> &'static str {
-        match self {
-            Self::SweMean | Self::MonthMean | Self::TotalMean | Self::MinimumMean | Self::MaximumMean => {
-                "mean"
-            }
-            Self::SweDeviation
-            | Self::MonthDeviation
-            | Self::TotalDeviation
-            | Self::MinimumDeviation
-            | Self::MaximumDeviation => "standard deviation",
-            Self::SweLow => "10 % quantile",
-            Self::SweMedian => "median",
-            Self::SweHigh => "90 % quantile",
-            Self::WetShare => "share of days that are wet",
-            Self::WetSpell => "length of wet spells",
-            Self::DrySpell => "length of dry spells",
-            Self::LongestDrySpell => "longest dry spell of a year",
-            Self::WetMean => "mean of wet days",
-            Self::WetHigh => "95 % quantile of wet days",
-            Self::LargestDay => "largest day of a year",
-            Self::TotalLag1 => "correlation with the year before",
-            Self::DryRun => "longest run of dry years",
-            Self::WetLessDry => "wet days less dry days",
-            Self::Correlation => "correlation over years",
-        }
+        self.known().words
+    }
+}
+
+impl Serialize for Statistic {
+    fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
+        serializer.serialize_str(self.name())
     }
 }

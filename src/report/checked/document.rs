@@ -6,6 +6,7 @@ use super::observed::SiteDocument;
 use crate::baseline::{Baseline, BaselineYears, Detrended, wilson};
 use crate::basin::{Band, BeyondStations};
 use crate::ensemble::BandClimate;
+use crate::findings::GeneratorSheet;
 use crate::perturb::Warming;
 use crate::season::SeasonSettings;
 use crate::snow::{GaugeMultiplier, SnowParams};
@@ -46,6 +47,8 @@ struct Document<'a> {
     warming: &'a Warming,
     defaults_in_force: Vec<DefaultDocument<'a>>,
     unlikely: Vec<String>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    generator: Option<&'a GeneratorSheet>,
 }
 
 #[derive(Serialize)]
@@ -133,6 +136,7 @@ impl Checked<'_> {
                 .iter()
                 .map(|notice| format!("{}: {}", notice.about, notice.why))
                 .collect(),
+            generator: self.generator,
         }
     }
 }

@@ -3,6 +3,7 @@
 mod baseline;
 mod document;
 mod elevation;
+mod generator_sheet;
 mod observed;
 mod record;
 
@@ -12,6 +13,7 @@ use crate::baseline::{Baseline, BaselineYears, Detrended, Seasons};
 use crate::basin::{Basin, BeyondStations};
 use crate::ensemble::BandClimate;
 use crate::fault::Unlikely;
+use crate::findings::GeneratorSheet;
 use crate::fit::Site;
 use crate::perturb::Warming;
 use crate::season::SeasonSettings;
@@ -67,6 +69,8 @@ pub struct Checked<'a> {
     pub defaults: Vec<(&'a str, &'a str)>,
     /// What is unlikely.
     pub unlikely: &'a [Unlikely],
+    /// The weather that was made against the record, if that was asked for.
+    pub generator: Option<&'a GeneratorSheet>,
 }
 
 /// Names stand in a column of this width.
@@ -143,6 +147,9 @@ impl Checked<'_> {
         });
         for notice in self.unlikely {
             page.paragraph(&format!("{}: {}", notice.about, notice.why));
+        }
+        if let Some(sheet) = self.generator {
+            generator_sheet::write(&mut page, sheet, self.reader);
         }
         page.text
     }

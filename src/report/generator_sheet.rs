@@ -1,0 +1,136 @@
+//! The generator sheet in words: what the page and the terminal both say of it.
+
+use super::numbers::{DASH, counted, fixed, trimmed};
+use super::reader::Reader;
+use crate::findings::{GeneratorSheet, Quantity, SheetLine, SheetStatistic, Subject, Verdict};
+
+/// A number of the sheet in the reader's units, without its unit.
+fn bare(reader: Reader, quantity: Quantity, value: f64) -> String {
+    let units = reader.units;
+    match quantity {
+        Quantity::DepthMm => reader.amount_bare(value),
+        Quantity::Share => fixed(100.0 * value, 0),
+        Quantity::Days => fixed(value, 1),
+        Quantity::Years => trimmed(&fixed(value, 1)).to_owned(),
+        Quantity::TemperatureC => fixed(units.temperature().of(value), 1),
+        Quantity::DifferenceC => fixed(units.warming().of(value), 1),
+        Quantity::Correlation => fixed(value, 2),
+    }
+}
+
+/// The unit behind it, with the blank between them.
+fn unit(reader: Reader, quantity: Quantity) -> String {
+    match quantity {
+        Quantity::DepthMm => format!(" {}", reader.units.depth().word),
+        Quantity::Share => " %".to_owned(),
+        Quantity::Days => " days".to_owned(),
+        Quantity::Years => " years".to_owned(),
+        Quantity::TemperatureC => format!(" {}", reader.units.temperature().word),
+        Quantity::DifferenceC => format!(" {}", reader.units.warming().word),
+        Quantity::Correlation => String::new(),
+    }
+}
+
+/// One line of the sheet as its cells.
+pub(super) struct Cells {
+    /// `mean, cool season`.
+    pub name: String,
+    /// Of the record, with its unit.
+    pub record: String,
+    /// The realizations' median.
+    pub median: String,
+    /// `310 to 402`.
+    pub range: String,
+    /// `within`, `below`, `above`; nothing where the line is not judged.
+    pub verdict: &'static str,
+}
+
+impl Cells {
+    pub fn of(statistic: &SheetStatistic, line: &SheetLine, reader: Reader) -> Self {
+        let quantity = statistic.quantity;
+        let told = |value: Option<f64>| value.map_or(DASH.to_owned(), |value| bare(reader, quantity, value));
+        let words = statistic.statistic.words();
+        Self {
+            name: if statistic.lines.len() > 1 {
+                format!("{words}, {}", line.period.words())
+            } else {
+                words.to_owned()
+            },
+            record: line.record.map_or(DASH.to_owned(), |value| {
+                format!("{}{}", bare(reader, quantity, value), unit(reader, quantity))
+            }),
+            median: told(line.range.map(|range| range.q50)),
+            range: line.range.map_or(DASH.to_owned(), |range| {
+                format!("{} to {}", bare(reader, quantity, range.q05), bare(reader, quantity, range.q95))
+            }),
+            verdict: line.verdict.map_or("", Verdict::words),
+        }
+    }
+}
+
+/// How the sheet was made, and how much of it is as it should be.
+pub(super) fn sentences(sheet: &GeneratorSheet, reader: Reader) -> Vec<String> {
+    let survey = sheet.survey.words();
+    let mut said = vec![format!(
+        "The record is held against {} of {}, as many as it has in use, made for this sheet: without an assumed change of \
+         mean precipitation, snow modelled at the reference, {survey} SWE of the basin mean. A day with more than {} is a wet \
+         one; 29 February is left out.",
+        counted(sheet.realizations, "realization"),
+        counted(sheet.years, "year"),
+        reader.limit(sheet.wet_day_mm),
+    )];
+    if sheet.lines_judged == 0 {
+        said.push("So few realizations have no 5\u{2013}95 % range: no line is judged.".to_owned());
+    } else {
+        said.push(format!(
+            "Of {} that {} judged, {} outside the realizations' 5\u{2013}95 % range; were the record one more realization, \
+             chance would put about {} there. Lines hang together, as months and their means do, so that a whole row outside \
+             tells more than a count.",
+            counted(sheet.lines_judged, "line"),
+            if sheet.lines_judged == 1 { "is" } else { "are" },
+            match sheet.lines_outside {
+                0 => "none lies".to_owned(),
+                1 => "1 lies".to_owned(),
+                many => format!("{} lie", fixed(many as f64, 0)),
+            },
+            fixed(sheet.outside_by_chance, 0),
+        ));
+        said.push(snow_mismatch(sheet, reader).unwrap_or_else(|| {
+            format!(
+                "{survey} SWE modelled from the weather that was made is like that modelled from the record."
+            )
+        }));
+    }
+    if let (Some(record), Some(realizations)) =
+        (sheet.largest_day_mm.record, sheet.largest_day_mm.realizations)
+    {
+        said.push(format!(
+            "The largest day of the record has {}, that of all realizations {}, out of {} times as many years.",
+            reader.amount(record),
+            reader.amount(realizations),
+            fixed(sheet.realizations as f64, 0),
+        ));
+    }
+    said
+}
+
+/// Where survey-date SWE from the weather that was made is not like that from the record, with its numbers; nothing where it
+/// is, or where it is not judged.
+pub(super) fn snow_mismatch(sheet: &GeneratorSheet, reader: Reader) -> Option<String> {
+    let of = |statistic: &SheetStatistic| {
+        let outside = statistic.lines.iter().find(|line| line.is_outside())?;
+        let cells = Cells::of(statistic, outside, reader);
+        Some(format!(
+            "{} {} from the record, {} in 9 of 10 realizations",
+            cells.name, cells.record, cells.range
+        ))
+    };
+    let outside: Vec<String> = sheet.about(Subject::SurveySwe).filter_map(of).collect();
+    (!outside.is_empty()).then(|| {
+        format!(
+            "{} SWE modelled from the weather that was made is not like that modelled from the record: {}.",
+            sheet.survey.words(),
+            outside.join("; ")
+        )
+    })
+}
