@@ -6,6 +6,7 @@ mod records;
 mod studies;
 mod through_year;
 mod volumes;
+mod weathers;
 
 use super::{FIGURES, Setting, text_width};
 use crate::calendar::{MonthDay, WaterYearStart};
@@ -165,6 +166,7 @@ fn each_figure_is_named_for_readers_who_do_not_see_it() {
         let of_years = "60 realizations of 30 years";
         let said: &[&str] = match slug {
             "record-years" | "record-precipitation" => &[],
+            "generator-sheet" => &["20 realizations of 5 years", "5–95 %", "not day-to-day variation"],
             "swe-through-year" => {
                 &[of_years, "10–90 %", "11 single years a level", "not day-to-day variation"]
             }
@@ -201,7 +203,7 @@ fn figures_without_their_measures_are_not_drawn() {
         units: UnitSystem::Metric,
         water_year_starts: WaterYearStart(MonthDay::new(10, 1).unwrap()),
     };
-    let findings = Findings { basin: Vec::new(), record: None, ..PLAIN.findings() };
+    let findings = Findings { basin: Vec::new(), record: None, generator: None, ..PLAIN.findings() };
     assert!(FIGURES.iter().all(|figure| (figure.draw)(&findings, &setting).is_none()));
 }
 

@@ -6,6 +6,7 @@
 mod apart;
 mod axes;
 mod backend;
+mod generator_sheet;
 mod headline;
 mod labels;
 mod marks;
@@ -70,7 +71,7 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 7] = [
+pub const FIGURES: [Figure; 8] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
@@ -78,6 +79,7 @@ pub const FIGURES: [Figure; 7] = [
     window_volume::FIGURE,
     record_years::FIGURE,
     record_precipitation::FIGURE,
+    generator_sheet::FIGURE,
 ];
 
 /// A figure of which there is one a site with observed snow.

@@ -134,3 +134,82 @@ pub(super) fn snow_mismatch(sheet: &GeneratorSheet, reader: Reader) -> Option<St
         )
     })
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::calendar::{MonthDay, WaterYearStart};
+    use crate::findings::{LargestDay, Period, RealizationRange, Statistic};
+    use crate::units::UnitSystem;
+
+    fn day(month: u32, day: u32) -> MonthDay {
+        MonthDay::new(month, day).unwrap()
+    }
+
+    fn reader(units: UnitSystem) -> Reader {
+        Reader { units, starts: WaterYearStart(day(10, 1)) }
+    }
+
+    /// A sheet of the survey's mean and standard deviation.
+    fn sheet(mean_mm: f64, mean: Verdict, deviation: Verdict) -> GeneratorSheet {
+        let of = |statistic: Statistic, record: f64, verdict: Verdict| SheetStatistic {
+            subject: statistic.subject(),
+            statistic,
+            quantity: statistic.quantity(),
+            lines: vec![SheetLine {
+                period: Period::WaterYear,
+                record: Some(record),
+                realizations: 300,
+                range: Some(RealizationRange { q05: 254.0, q50: 300.0, q95: 381.0 }),
+                verdict: Some(verdict),
+            }],
+        };
+        let statistics =
+            vec![of(Statistic::SweMean, mean_mm, mean), of(Statistic::SweDeviation, 300.0, deviation)];
+        let outside = statistics.iter().flat_map(|of| &of.lines).filter(|line| line.is_outside()).count();
+        GeneratorSheet {
+            realizations: 300,
+            years: 44,
+            wet_day_mm: 0.3,
+            survey: day(4, 1),
+            lines_judged: 2,
+            lines_outside: outside,
+            outside_by_chance: 0.2,
+            largest_day_mm: LargestDay { record: Some(101.6), realizations: Some(101.6) },
+            statistics,
+        }
+    }
+
+    #[test]
+    fn a_mismatch_of_snow_is_said_with_its_numbers() {
+        let [metric, us] = [UnitSystem::Metric, UnitSystem::Us].map(reader);
+        use Verdict::{Above, Below, Within};
+        assert_eq!(snow_mismatch(&sheet(300.0, Within, Within), metric), None);
+        assert_eq!(
+            snow_mismatch(&sheet(127.0, Below, Within), metric).unwrap(),
+            "1 April SWE modelled from the weather that was made is not like that modelled from the record: mean 127 mm from the \
+             record, 254 to 381 in 9 of 10 realizations."
+        );
+        let both = snow_mismatch(&sheet(127.0, Below, Above), us).unwrap();
+        assert!(both.contains("mean 5.0 in from the record, 10.0 to 15.0 in 9 of 10"), "{both}");
+        assert!(both.contains("; standard deviation 11.8 in"), "{both}");
+    }
+
+    #[test]
+    fn the_count_is_said_beside_what_chance_would_bring() {
+        let said = |sheet: &GeneratorSheet| sentences(sheet, reader(UnitSystem::Metric));
+        let within = said(&sheet(300.0, Verdict::Within, Verdict::Within));
+        assert!(within[1].starts_with("Of 2 lines that are judged, none lies outside"), "{}", within[1]);
+        assert!(within[1].contains("chance would put about 0 there"), "{}", within[1]);
+        assert!(within[2].contains("is like that modelled from the record"), "{}", within[2]);
+        let below = said(&sheet(100.0, Verdict::Below, Verdict::Within));
+        assert!(below[1].contains("1 lies outside"), "{}", below[1]);
+        assert!(below[2].contains("mean 100 mm from the record"), "{}", below[2]);
+        assert!(
+            below[3]
+                .ends_with("has 102 mm, that of all realizations 102 mm, out of 300 times as many years.")
+        );
+        let unjudged = GeneratorSheet { lines_judged: 0, ..sheet(300.0, Verdict::Within, Verdict::Within) };
+        assert!(said(&unjudged)[1].contains("no line is judged"));
+    }
+}

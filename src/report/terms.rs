@@ -4,7 +4,7 @@ use super::reader::Reader;
 use crate::season::{BARE_MM, LEAST_PEAK_MM, RAIN_ON_SNOW_MM};
 
 /// Terms and their meanings, in a reader's units.
-pub(super) fn terms(reader: Reader) -> [(&'static str, String); 26] {
+pub(super) fn terms(reader: Reader) -> [(&'static str, String); 29] {
     let water_equivalent = format!("depth of water if the snow were melted, {}", reader.units.depth().word);
     let warming_level = format!(
         "degrees added to the record's temperatures, whose own climate is {}; all levels are compared with the reference",
@@ -25,13 +25,25 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 26] {
          and snowy ground",
         reader.limit(RAIN_ON_SNOW_MM)
     );
-    let terms: [(&'static str, &str); 26] = [
+    let terms: [(&'static str, &str); 29] = [
         ("Snow water equivalent (SWE)", &water_equivalent),
         ("Water year", "starts on the stated day and is named for the calendar year in which it ends"),
         ("Warming level", &warming_level),
         (
             "Realization",
             "one synthetic record of so many water years; each runs under every level, so differences are paired",
+        ),
+        (
+            "Weather that was made, generator",
+            "the realizations' weather, and what makes it from the record; the generator sheet holds the one against the other",
+        ),
+        (
+            "Wet day, spell",
+            "a day with more than the stated limit; days in succession that are wet, or that are not",
+        ),
+        (
+            "Correlation with the year before",
+            "lag-1 autocorrelation over the years that follow on one another: above 0 where wet years come together",
         ),
         (
             "Period value",

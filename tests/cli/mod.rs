@@ -4,6 +4,7 @@ pub mod basin;
 mod closed_form;
 mod corpus;
 mod data_faults;
+mod generator_sheet;
 mod identities;
 mod interrupt;
 mod keys;

@@ -7,9 +7,11 @@ use std::collections::HashMap;
 /// A row by the names of its columns.
 type Row = HashMap<String, String>;
 
-/// A study with an assumed change of mean precipitation, in one unit system.
+/// A study with an assumed change of mean precipitation, in one unit system, and realizations enough for the generator sheet
+/// to be judged.
 fn study(units: &str) -> (Basin, Value) {
     let basin = Basin::new();
+    basin.exchange("count = 12", "count = 16");
     basin.exchange("years = 5", "years = 5\nmean_change_sd_pct = 8");
     basin.exchange("[warming]", &format!("[report]\nunits = \"{units}\"\n\n[warming]"));
     let ended = basin.run("study scenario.toml --into out --quiet");
@@ -149,7 +151,7 @@ fn yardsticks(basin: &Basin, findings: &Value, told: &Told) {
                 if is_held {
                     assert_eq!(
                         ["years", "periods", "mean_change_sd_pct", "times_assumed"].map(|name| &*row[name]),
-                        ["5", "12", "8", "1"]
+                        ["5", "16", "8", "1"]
                     );
                 } else {
                     told.outweighs(&row, "outweighs_standard_deviation", &of["outweighs_standard_deviation"]);
@@ -227,6 +229,43 @@ fn swe_through_year(basin: &Basin, findings: &Value, told: &Told) {
     }
 }
 
+/// A row a line; a temperature has its zero moved, a difference of temperatures has none to move.
+fn generator_sheet(basin: &Basin, findings: &Value, told: &Told) {
+    let mut rows = rows(basin, "generator-sheet").into_iter();
+    for of in list(&findings["generator"]["statistics"]) {
+        let (unit, factor, zero) = match of["quantity"].as_str().unwrap() {
+            "depth_mm" => (told.depth.0, told.depth.1, 0.0),
+            "temperature_c" => {
+                (told.warming.0, told.warming.1, if told.warming.1 == 1.0 { 0.0 } else { 32.0 })
+            }
+            "difference_c" => (told.warming.0, told.warming.1, 0.0),
+            plain => (plain, 1.0, 0.0),
+        };
+        for line in list(&of["lines"]) {
+            let row = rows.next().expect("a row a line");
+            for (column, name) in [
+                ("subject", &of["subject"]),
+                ("statistic", &of["statistic"]),
+                ("part_of_year", &line["period"]),
+            ] {
+                assert_eq!(row[column], name.as_str().unwrap());
+            }
+            assert_eq!(row["unit"], unit);
+            assert_eq!(row["record_lies"], line["verdict"].as_str().unwrap_or(""));
+            let moved = |number: &Value| {
+                number.as_f64().map_or(Value::Null, |number| (factor * number + zero).into())
+            };
+            hold(&row, "record", &moved(&line["record"]), 1.0);
+            for quantile in ["q05", "q50", "q95"] {
+                hold(&row, &format!("realizations_{quantile}"), &moved(&line["range"][quantile]), 1.0);
+            }
+            hold(&row, "realizations_with_number", &line["realizations"], 1.0);
+            hold(&row, "years_of_each", &findings["generator"]["years"], 1.0);
+        }
+    }
+    assert!(rows.next().is_none());
+}
+
 #[test]
 fn cells_are_the_summarys_numbers() {
     for (units, told) in [("metric", METRIC), ("us", US)] {
@@ -236,6 +275,7 @@ fn cells_are_the_summarys_numbers() {
         record_range(&basin, &findings, &told);
         break_even(&basin, &findings, &told);
         swe_through_year(&basin, &findings, &told);
+        generator_sheet(&basin, &findings, &told);
     }
 }
 

@@ -136,7 +136,8 @@ impl Study<'_> {
         };
         let runs = Runs { study: &seasons, temperature_held: None, other_changes: &[], refits: &[] };
         let record = super::records::PLAIN.findings(self.levels_c, self.reference);
-        Findings { years: 30, record: Some(record), ..answer(&runs, &questions, &Silent).unwrap() }
+        let generator = Some(super::weathers::PLAIN.sheet());
+        Findings { years: 30, record: Some(record), generator, ..answer(&runs, &questions, &Silent).unwrap() }
     }
 
     /// SWE that rises to what the amounts say and falls again, a few years of it.
