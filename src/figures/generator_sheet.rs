@@ -26,7 +26,7 @@ const SUBJECT_PX: f64 = 28.0;
 /// Height of the columns' names, px.
 const HEAD_PX: f64 = 30.0;
 /// Half of the width that every range is drawn to, and of its height, px.
-const HALF_RANGE_PX: Px = (7.5, 5.0);
+const HALF_RANGE_PX: Px = (8.5, 5.5);
 /// Between a range and the mark beyond it, and the length of that mark, px.
 const BEYOND_PX: [f64; 2] = [1.0, 6.0];
 /// Radius of the record's mark within the range, px.

@@ -136,7 +136,7 @@ impl Study<'_> {
         };
         let runs = Runs { study: &seasons, temperature_held: None, other_changes: &[], refits: &[] };
         let record = super::records::PLAIN.findings(self.levels_c, self.reference);
-        let generator = Some(super::weathers::PLAIN.sheet());
+        let generator = Some(super::weathers::PLAIN_SHEET.clone());
         Findings { years: 30, record: Some(record), generator, ..answer(&runs, &questions, &Silent).unwrap() }
     }
 

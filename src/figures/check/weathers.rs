@@ -6,6 +6,7 @@ use crate::calendar::{MonthDay, WaterYearStart};
 use crate::findings::{Findings, GeneratorSheet, SheetLine, SheetQuestions, Subject, Verdict};
 use crate::units::UnitSystem;
 use crate::weather::{Series, YearSpan};
+use std::sync::LazyLock;
 
 /// A made-up sheet: every line of it, from five years of made-up weather, as `line` changes it.
 #[derive(Clone, Copy)]
@@ -19,7 +20,7 @@ pub struct Made {
 }
 
 /// Every ninth line outside, to either side.
-pub const PLAIN: Made = Made {
+const PLAIN: Made = Made {
     month: 10,
     survey: [4, 1],
     realizations: 20,
@@ -41,8 +42,11 @@ fn moved(line: SheetLine, verdict: Verdict) -> SheetLine {
     SheetLine { record: Some(record), verdict: Some(verdict), ..line }
 }
 
+/// The plain sheet, made once.
+pub static PLAIN_SHEET: LazyLock<GeneratorSheet> = LazyLock::new(|| PLAIN.sheet());
+
 impl Made {
-    pub fn sheet(&self) -> GeneratorSheet {
+    fn sheet(&self) -> GeneratorSheet {
         let day = |month, day| MonthDay::new(month, day).unwrap();
         let (starts, survey) = (WaterYearStart(day(self.month, 1)), day(self.survey[0], self.survey[1]));
         let questions = SheetQuestions::new(0.3, starts, survey);
@@ -57,6 +61,8 @@ impl Made {
                     weather.mean_c.push(20.0 * number - 10.0);
                     weather.half_range_c.push(4.0 + number);
                     weather.precipitation_mm.push((30.0 * number - 20.0).max(0.0));
+                    weather.month.push(0);
+                    weather.day_of_year.push(1);
                 }
             }
             let swe_mm: Vec<f64> = (0..5).map(|year| ((salt + year) * 7919 % 401) as f64).collect();
@@ -73,7 +79,11 @@ impl Made {
     }
 
     fn draw(&self, units: UnitSystem) -> Svg {
-        let findings = Findings { generator: Some(self.sheet()), ..super::studies::PLAIN.findings() };
+        self.draw_of(self.sheet(), units)
+    }
+
+    fn draw_of(&self, sheet: GeneratorSheet, units: UnitSystem) -> Svg {
+        let findings = Findings { generator: Some(sheet), ..super::studies::PLAIN.findings() };
         let water_year_starts = WaterYearStart(MonthDay::new(self.month, 1).unwrap());
         let setting = Setting { study_title: "Alder Fork", units, water_year_starts };
         (generator_sheet::FIGURE.draw)(&findings, &setting).unwrap()
@@ -108,8 +118,9 @@ fn sheets() -> [(&'static str, Made); 7] {
 #[test]
 fn text_lies_inside_and_apart() {
     for (name, made) in sheets() {
+        let sheet = made.sheet();
         for units in [UnitSystem::Metric, UnitSystem::Us] {
-            let svg = made.draw(units);
+            let svg = made.draw_of(sheet.clone(), units);
             assert_texts_apart(name, &svg.text);
             assert!(!svg.text.contains("NaN") && !svg.text.contains("inf"), "{name}");
         }
@@ -120,7 +131,8 @@ fn text_lies_inside_and_apart() {
 #[test]
 fn every_line_has_its_mark() {
     for (name, made) in sheets() {
-        let (sheet, svg) = (made.sheet(), made.draw(UnitSystem::Metric));
+        let sheet = made.sheet();
+        let svg = made.draw_of(sheet.clone(), UnitSystem::Metric);
         let drawn = |element: &str| svg.text.matches(element).count();
         assert_eq!(drawn("<polygon"), sheet.lines_outside, "{name}");
         assert_eq!(drawn("<circle"), sheet.lines_judged - sheet.lines_outside, "{name}");
@@ -153,5 +165,5 @@ fn the_title_turns_with_the_snow() {
     );
     let few = Made { realizations: 3, line: |_, line| line, ..PLAIN }.draw(UnitSystem::Metric).title;
     assert!(few.starts_with("3 realizations cannot tell"), "{few}");
-    assert_eq!(PLAIN.sheet().about(Subject::SurveySwe).count(), 5);
+    assert_eq!(PLAIN_SHEET.about(Subject::SurveySwe).count(), 5);
 }

@@ -5,7 +5,7 @@ use super::super::theme::LABEL;
 use crate::findings::{GeneratorSheet, Period};
 
 /// Width of a month's column, and of a season's or the year's, px.
-const WIDTHS_PX: [f64; 2] = [25.0, 36.0];
+const WIDTHS_PX: [f64; 2] = [28.0, 36.0];
 /// Space between the months and the rest, px.
 const GAP_PX: f64 = 6.0;
 

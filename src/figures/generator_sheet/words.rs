@@ -24,11 +24,12 @@ impl Words {
         let key = format!(
             "Grey: the realizations' 5–95 % range, every one drawn to the same width, with its median. Dot: where the record lies \
              in it. Triangle: the record lies below the range (pointing left) or above it (right). Dash: no number. Chance \
-             would put about {} outside were the record one more realization.",
+             would put about {} outside were the record one more realization; made from the record, realizations centre on it, so \
+             that fewer is usual.",
             counted(sheet.outside_by_chance.round() as usize, "line")
         );
         let caption = format!(
-            "Each cell holds one number of the record against the same number of {sample}. Ranges have units and sizes of their \
+            "Each cell holds one number of the record against the 5–95 % range of the same number of {sample}. Ranges have units and sizes of their \
              own and are drawn to one width: a mark's place tells how usual the record is among realizations, and not how \
              large a difference is. Months run from the water year's first; cool is its part up to {survey}, warm the rest. \
              {survey} SWE is modelled at the reference, from the record and from realizations alike. 29 February is left \

@@ -67,13 +67,13 @@ fn by_hand() -> SheetSample {
     questions(day(4, 1)).sample(&series, &[100.0, 300.0, 200.0, 600.0])
 }
 
-/// By hand: October totals are 9.3 + 10, 30, 20, 60 mm; about their mean of 39.3, departures are -20, 0, -10, 30 with squares
-/// of 1400. April has 30 days of 0.3 mm each year.
+/// By hand: October has 30 days of 0.3 mm beside the wet one: totals are 9 + 10, 30, 20, 60 mm; about their mean of 39,
+/// departures are -20, 0, -10, 30 with squares of 1400. April has 30 days of 0.3 mm each year.
 #[test]
 fn totals_of_months_and_of_seasons() {
     let sample = by_hand();
     let [october, april] = [9, 3].map(Period::Month);
-    near(value(&sample, Statistic::MonthMean, october), 39.3);
+    near(value(&sample, Statistic::MonthMean, october), 39.0);
     near(value(&sample, Statistic::MonthDeviation, october), (1400.0_f64 / 3.0).sqrt());
     near(value(&sample, Statistic::MonthMean, april), 9.0);
     near(value(&sample, Statistic::MonthDeviation, april), 0.0);
