@@ -85,7 +85,7 @@ pub(super) fn sentences(sheet: &GeneratorSheet, reader: Reader) -> Vec<String> {
         said.push(format!(
             "Of {} that {} judged, {} outside the realizations' 5\u{2013}95 % range; were the record one more realization, \
              chance would put about {} there. Realizations are made from this record and centre on it, so that fewer is usual \
-             and more is a fault of what makes them. Lines hang together, as the months of one statistic do: a whole row \
+             and more speaks against what makes them. Lines hang together, as the months of one statistic do: a whole row \
              outside tells more than a count.",
             counted(sheet.lines_judged, "line"),
             if sheet.lines_judged == 1 { "is" } else { "are" },
