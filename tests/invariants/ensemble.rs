@@ -6,7 +6,7 @@ use ndarray::{Axis, Slice};
 use proptest::prelude::*;
 use rayon::ThreadPoolBuilder;
 use thawline::calendar::MonthDay;
-use thawline::ensemble::{BasinSeasons, Plan, Seasons, Silent, SweBins, run, run_records};
+use thawline::ensemble::{BasinSeasons, Plan, Seasons, Silent, SurveySwe, SweBins, run, run_records};
 use thawline::perturb::{Generator, MeanChange, MonthlyChange, TemperatureHeld, YearBlocks};
 use thawline::season::{Measures, SeasonSettings};
 use thawline::snow::{Lanes, Path};
@@ -156,6 +156,24 @@ proptest! {
             let found = study.run_from(generator, 2, (5, 9), Path::Widest);
             let every_year = study.run_from(&EveryYearNew(generator), 2, (5, 9), Path::Widest);
             prop_assert!(all_bits(&found) == all_bits(&every_year), "what is remembered differs");
+        }
+    }
+
+    /// The survey's SWE of the generator sheet is the study's own, to the bit, of realizations in order.
+    /// The first survey date is the water year's first day, the second is asked for.
+    #[test]
+    fn the_sheets_snow_is_the_studys(mut scenario in scenarios(), mean_c in -25.0..15.0) {
+        scenario.climate.mean_c = mean_c;
+        let study = Study::of(&scenario, &scenario.changes()[..1]);
+        let generator = study.generator(&study.record);
+        let snow = SurveySwe { lanes: &study.lanes, bands: study.bands, survey: study.measures.settings().survey_dates[1] };
+        let found = snow.each_realization(&generator, 4, 5, &Silent, |weather, swe_mm| {
+            (weather.years.len(), swe_mm.to_vec())
+        });
+        let studys = study.run_from(&generator, 2, (4, 5), Path::Widest).basin;
+        let second = studys.years.index_axis(Axis(0), 0).index_axis_move(Axis(0), 1);
+        for ((years, swe_mm), studys) in found.expect("a closed ledger").iter().zip(second.rows()) {
+            prop_assert_eq!((*years, bits(swe_mm)), (5, bits(studys)));
         }
     }
 
