@@ -194,6 +194,11 @@ pub fn snowfall_fraction(rain_mm: &[f64], snow_mm: &[f64]) -> Option<f64> {
     if rain + snow == 0.0 { None } else { Some(snow / (rain + snow)) }
 }
 
+/// All that fell on the days before one.
+pub fn fallen_before(rain_mm: &[f64], snow_mm: &[f64], day: usize) -> f64 {
+    in_window(rain_mm, 1, day - 1) + in_window(snow_mm, 1, day - 1)
+}
+
 /// S on a day over all that fell on the days before it.
 pub fn over_precipitation(swe_mm: &[f64], rain_mm: &[f64], snow_mm: &[f64], survey: usize) -> Option<f64> {
     let fallen = in_window(rain_mm, 1, survey - 1) + in_window(snow_mm, 1, survey - 1);

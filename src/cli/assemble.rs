@@ -286,6 +286,12 @@ impl Ready {
         vec![self.scenario.weather.station_elevation_m]
     }
 
+    /// What each level changes, month by month.
+    pub fn changes(&self) -> Vec<MonthlyChange> {
+        let typed = &self.scenario.warming;
+        typed.levels_c.iter().map(|level_c| typed.warming.at(*level_c)).collect()
+    }
+
     /// Lanes of every band under each change, and a basin mean for each.
     pub fn lanes(&self, changes: &[MonthlyChange]) -> Lanes {
         let shares = self.basin.shares();

@@ -1,8 +1,9 @@
 //! Break-even precipitation by root finding on runs, and how wet periods have been.
 
 use super::assemble::Ready;
+use super::level_groups::LevelGroups;
 use crate::baseline::Seasons as SeasonsOf;
-use crate::ensemble::{BasinSeasons, Halt, Plan, Watch, run_records};
+use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, Watch, run_records};
 use crate::findings::{BreakEven, BreakEvenLevel, Reached, Root, break_even_pct, quantile, sorted};
 use crate::perturb::{Generator, MeanChange, MonthlyChange};
 use crate::season::Measures;
@@ -19,12 +20,13 @@ const BREAK_EVEN_REALIZATIONS: u32 = 100;
 pub(super) fn break_even(
     ready: &Ready,
     plan: &Plan<'_>,
-    changes: &[MonthlyChange],
-    generator: &MeanChange<'_>,
+    groups: &LevelGroups<'_>,
+    made: &dyn Generator,
     watch: &dyn Watch,
 ) -> Result<BreakEven, Halt> {
     let all = plan.realizations;
-    let unchanged = generator.generator;
+    let changes = &groups.changes;
+    let weather = groups.weather(made);
     let realizations = plan.realizations.min(BREAK_EVEN_REALIZATIONS);
     let measures = Measures::of_snow(plan.measures.settings().clone(), ready.basin.area_km2());
     let plan = Plan { realizations, measures: &measures, ..*plan };
@@ -33,8 +35,11 @@ pub(super) fn break_even(
             changes.iter().zip(pct).map(|(change, pct)| change.with_precipitation(*pct)).collect();
         // The reference stays: it is what is to be regained, and decides about perennial snow.
         scaled[plan.reference] = changes[plan.reference].clone();
-        let lanes = ready.lanes(&scaled);
-        let plan = Plan { lanes: &lanes, ..plan };
+        let lanes = groups.lanes(&scaled);
+        let of_groups: Vec<LevelGroup<'_>> =
+            lanes.iter().zip(&weather).map(|(lanes, generator)| LevelGroup { lanes, generator }).collect();
+        let plan = Plan { groups: &of_groups, ..plan };
+        let unchanged: Vec<&dyn Generator> = weather.iter().map(|of_group| of_group as _).collect();
         let seasons: Vec<BasinSeasons> = run_records(&plan, &[unchanged], watch)?.collect();
         let of = |level: usize| {
             let periods = seasons[0].periods.index_axis(ndarray::Axis(0), level);
@@ -50,7 +55,12 @@ pub(super) fn break_even(
         Ok::<_, Halt>(medians.into_iter().map(|median| median - reference_median).collect())
     })?;
     let survey = ready.scenario.season.survey_dates[0];
-    let wetness = Wetness::of(&ready.drawn_from, generator, [all as usize, plan.years], survey, watch)?;
+    let generator = MeanChange {
+        generator: made,
+        seed: ready.scenario.seed,
+        standard_deviation_pct: ready.scenario.realizations.mean_change_sd_pct.unwrap_or(0.0),
+    };
+    let wetness = Wetness::of(&ready.drawn_from, &generator, [all as usize, plan.years], survey, watch)?;
     let levels_c = &ready.scenario.warming.levels_c;
     let levels = levels_c.iter().zip(roots).enumerate().filter(|(level, _)| *level != plan.reference);
     Ok(BreakEven {

@@ -8,6 +8,7 @@ mod daily;
 mod failure;
 mod input;
 mod last_words;
+mod level_groups;
 mod output;
 mod own_years;
 mod progress;

@@ -6,13 +6,14 @@ use crate::ensemble::{RecordRun, RecordYear};
 use crate::findings::{RecordFindings, RecordQuestions};
 use crate::season::Measures;
 
-/// Runs them, and asks them.
+/// Runs them, and asks them. Their wet days are the record's own even where warming changes wet days: which of them it would
+/// take is chance, and no named year has any. Their precipitation takes the change of the mean alone.
 pub(super) fn own_years(
     ready: &Ready,
     measures: &Measures,
 ) -> Result<(Vec<RecordYear>, Option<RecordFindings>), Failure> {
     let warming = &ready.scenario.warming;
-    let changes: Vec<_> = warming.levels_c.iter().map(|level| warming.warming.at(*level)).collect();
+    let changes = ready.changes();
     let run = RecordRun {
         lanes: &ready.lanes(&changes),
         levels: changes.len(),

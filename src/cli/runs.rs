@@ -3,8 +3,9 @@
 use super::assemble::Ready;
 use super::break_even::break_even;
 use super::failure::Failure;
+use super::level_groups::LevelGroups;
 use super::progress::Progress;
-use crate::ensemble::{BasinSeasons, Halt, Plan, SweBins, Watch, run, run_records};
+use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
     Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit, Runs,
     TIMES_ASSUMED, answer,
@@ -20,20 +21,22 @@ use crate::weather::Series;
 pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findings, Failure> {
     let scenario = &ready.scenario;
     let (warming, realizations) = (&scenario.warming, &scenario.realizations);
-    let changes: Vec<_> = warming.levels_c.iter().map(|level| warming.warming.at(*level)).collect();
-    let lanes = ready.lanes(&changes);
-    let reference_lanes = ready.lanes(&changes[warming.reference..=warming.reference]);
+    let groups = LevelGroups::of(ready);
+    let lanes = groups.lanes(&groups.changes);
+    let reference_lanes = ready.lanes(&groups.changes[warming.reference..=warming.reference]);
     let mean_change_sd_pct = realizations.mean_change_sd_pct.unwrap_or(0.0);
-    let (recipe, seed) = (ready.recipe(), scenario.seed);
+    let recipe = ready.recipe();
     let made = recipe.of(&ready.drawn_from);
-    let generator = MeanChange { generator: &*made, seed, standard_deviation_pct: mean_change_sd_pct };
+    let weather = groups.weather(&*made);
+    let generators = groups.changed(&weather);
+    let reference_generator = generators[groups.of_reference];
+    let of_groups: Vec<LevelGroup<'_>> =
+        lanes.iter().zip(&generators).map(|(lanes, generator)| LevelGroup { lanes, generator }).collect();
     let plan = Plan {
-        lanes: &lanes,
-        levels: changes.len(),
+        groups: &of_groups,
         reference: warming.reference,
         bands: ready.basin.bands.len(),
         measures,
-        generator: &generator,
         realizations: realizations.count,
         years: realizations.years,
         path: Path::default(),
@@ -43,16 +46,17 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let times = times_assumed.len() as u32 + 2;
     progress.begins(realizations.count * times + of_a_record);
 
-    let bins = SweBins::of_record(&lanes, &ready.drawn_from).map_err(open)?;
+    let bins = SweBins::of_record(&ready.lanes(&ready.changes()), &ready.drawn_from).map_err(open)?;
     let study = run(&plan, bins, progress).map_err(halted)?;
-    let held = TemperatureHeld::new(&generator, &ready.drawn_from);
-    let of_reference = Plan { lanes: &reference_lanes, levels: 1, reference: 0, ..plan };
-    let held = run(&Plan { generator: &held, ..of_reference }, bins, progress).map_err(halted)?;
+    let held = TemperatureHeld::new(&reference_generator, &ready.drawn_from);
+    let held = [LevelGroup { lanes: &reference_lanes, generator: &held }];
+    let of_reference = Plan { groups: &held, reference: 0, ..plan };
+    let held = run(&of_reference, bins, progress).map_err(halted)?;
     let mut other_changes = Vec::with_capacity(times_assumed.len());
     for times_assumed in times_assumed.iter().copied() {
         let standard_deviation_pct = mean_change_sd_pct * times_assumed;
-        let generator = MeanChange { standard_deviation_pct, ..generator };
-        let only: [&dyn Generator; 1] = [&generator];
+        let generator = MeanChange { standard_deviation_pct, ..reference_generator };
+        let only: [Vec<&dyn Generator>; 1] = [vec![&generator]];
         let reference = run_records(&of_reference, &only, progress).map_err(halted)?;
         other_changes.extend(reference.map(|reference| OtherChange { times_assumed, reference }));
     }
@@ -60,11 +64,12 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let records: Vec<Series> = (0..RESAMPLED_RECORDS).map(resampled).collect();
     let made_of_records: Vec<Box<dyn Generator + '_>> =
         records.iter().map(|record| recipe.of(record)).collect();
-    let changed: Vec<MeanChange<'_>> =
-        made_of_records.iter().map(|of_record| MeanChange { generator: &**of_record, ..generator }).collect();
-    let generators: Vec<&dyn Generator> = changed.iter().map(|of_record| of_record as _).collect();
+    let weather_of_records: Vec<_> = made_of_records.iter().map(|made| groups.weather(&**made)).collect();
+    let changed: Vec<_> = weather_of_records.iter().map(|weather| groups.changed(weather)).collect();
+    let of_each_record: Vec<Vec<&dyn Generator>> =
+        changed.iter().map(|changed| changed.iter().map(|of_group| of_group as _).collect()).collect();
     let of_records = Plan { realizations: of_a_record, ..plan };
-    let of_records = run_records(&of_records, &generators, progress).map_err(halted)?;
+    let of_records = run_records(&of_records, &of_each_record, progress).map_err(halted)?;
     let refit = |seasons: BasinSeasons| {
         Refit::of(&seasons, ready.drawn_from.years.len(), &warming.levels_c, warming.reference)
     };
@@ -73,7 +78,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     // Only a warmer level has something to be made up for.
     let break_even = if warming.reference + 1 < warming.levels_c.len() {
         progress.stage("looking for the precipitation that would make up for the warming");
-        Some(break_even(ready, &plan, &changes, &generator, &Quiet(progress)).map_err(halted)?)
+        Some(break_even(ready, &plan, &groups, &*made, &Quiet(progress)).map_err(halted)?)
     } else {
         None
     };

@@ -1,5 +1,6 @@
 //! Run many: every realization under every warming level, on as many threads as there are.
 
+mod bench;
 mod climate;
 mod memory;
 mod plan;
@@ -11,7 +12,7 @@ mod swe_days;
 mod watch;
 
 pub use climate::{BandClimate, WinterMonths, band_climates};
-pub use plan::Plan;
+pub use plan::{LevelGroup, Plan};
 pub use record::{RecordRun, RecordYear};
 pub use run::{run, run_records};
 pub use seasons::{BasinSeasons, Seasons};

@@ -4,21 +4,33 @@ use crate::perturb::Generator;
 use crate::season::{Measures, NONE, keeps_snow};
 use crate::snow::{Lanes, Path, YearBlock};
 
+/// Levels that share their weather.
+#[derive(Clone, Copy)]
+pub struct LevelGroup<'a> {
+    /// Every band at each of the levels, a group of lanes and a basin mean for each level.
+    pub lanes: &'a Lanes,
+    /// Makes the weather.
+    pub generator: &'a dyn Generator,
+}
+
+impl LevelGroup<'_> {
+    /// How many levels it has.
+    pub fn levels(&self) -> usize {
+        self.lanes.mixes()
+    }
+}
+
 /// What is to be run.
 #[derive(Clone, Copy)]
 pub struct Plan<'a> {
-    /// Every band at every level, a group of lanes and a basin mean for each level.
-    pub lanes: &'a Lanes,
-    /// How many levels.
-    pub levels: usize,
-    /// The reference among them.
+    /// All levels in their order: one group, or where levels change the weather's days, one for each weather.
+    pub groups: &'a [LevelGroup<'a>],
+    /// The reference among the levels.
     pub reference: usize,
     /// Bands of a level.
     pub bands: usize,
     /// What is measured.
     pub measures: &'a Measures,
-    /// Makes the weather.
-    pub generator: &'a dyn Generator,
     /// How many realizations.
     pub realizations: u32,
     /// Water years of each.
@@ -28,9 +40,27 @@ pub struct Plan<'a> {
 }
 
 impl Plan<'_> {
-    /// Whether a band of the reference kept its snow through a year.
-    pub(super) fn keeps_snow(&self, block: &YearBlock) -> bool {
-        (0..self.bands).any(|band| keeps_snow(block, self.lanes.column(self.reference, band)))
+    /// How many levels there are.
+    pub fn levels(&self) -> usize {
+        self.groups.iter().map(LevelGroup::levels).sum()
+    }
+
+    /// How many levels stand in the groups before one.
+    pub(super) fn levels_before(&self, group: usize) -> usize {
+        self.groups[..group].iter().map(LevelGroup::levels).sum()
+    }
+
+    /// The reference's place in a group, if that is its group.
+    pub(super) fn reference_in(&self, group: usize) -> Option<usize> {
+        let place = self.reference.checked_sub(self.levels_before(group))?;
+        (place < self.groups[group].levels()).then_some(place)
+    }
+
+    /// Whether a band of the reference kept its snow through a year of a group that has the reference.
+    pub(super) fn keeps_snow(&self, group: usize, block: &YearBlock) -> bool {
+        let lanes = self.groups[group].lanes;
+        let keeps = |level: usize| (0..self.bands).any(|band| keeps_snow(block, lanes.column(level, band)));
+        self.reference_in(group).is_some_and(keeps)
     }
 
     /// Every measure of every column of a year, `[measure][column]`.

@@ -1,13 +1,12 @@
 //! One realization under every level: its years are run once and measured, for basin and bands or for the basin alone.
 
-use super::memory::{Memory, Remembered, SnowAt};
+use super::bench::{Bench, FirstYear};
+use super::memory::Remembered;
 use super::plan::Plan;
 use super::swe_days::Tally;
 use super::watch::{Halt, Watch};
 use crate::perturb::Generator;
 use crate::season::{NONE, NOT_GONE, period_value};
-use crate::snow::{Engine, YearBlock};
-use crate::weather::Series;
 
 /// What is kept of a realization's basin means: `[level][measure][year]`.
 pub(super) struct BasinKept(pub Vec<f64>);
@@ -21,144 +20,122 @@ pub(super) struct Kept {
     pub band_undefined: Vec<[u32; 2]>,
 }
 
-/// What a thread reuses from one realization to the next: one buffer of weather, one engine, one narrow block, and the
-/// years that it has run.
+/// What a thread reuses from one realization to the next: a bench for each group of levels.
 pub(super) struct Workshop<'p> {
     plan: &'p Plan<'p>,
-    engine: Engine<'p>,
-    weather: Series,
-    means: YearBlock,
-    memory: Memory,
-    /// The realization's years, as places in the memory.
-    years: Vec<usize>,
+    benches: Vec<Bench<'p>>,
+    /// The group that has the reference.
+    of_reference: usize,
 }
 
 impl<'p> Workshop<'p> {
     pub fn new(plan: &'p Plan<'p>) -> Self {
+        let has_reference = |group: &usize| plan.reference_in(*group).is_some();
         Self {
             plan,
-            engine: Engine::on_path(plan.lanes, false, plan.path),
-            weather: Series::default(),
-            means: YearBlock::of_means(plan.lanes),
-            memory: Memory::default(),
-            years: Vec::new(),
+            benches: plan.groups.iter().map(|group| Bench::new(group, plan.path)).collect(),
+            of_reference: (0..plan.groups.len()).find(has_reference).unwrap_or_default(),
         }
     }
 
     /// Runs a realization from bare ground, and measures every column, bands and basin means.
     pub fn run(&mut self, number: u32, tally: &Tally, watch: &dyn Watch) -> Result<Kept, Halt> {
         let plan = self.plan;
-        self.forget(plan.generator.drawn(number, plan.years).is_some());
-        self.run_years(number, plan.generator, watch, |block, _| Remembered {
-            is_perennial: plan.keeps_snow(block),
-            swe_bins: tally.bins(block),
-            measured: plan.measured(block),
+        self.each_group(|group, bench, first_year| {
+            let generator = plan.groups[group].generator;
+            bench.tidy(generator.drawn(number, plan.years).is_some());
+            let levels = bench.lanes.mixes();
+            bench.run_years((number, plan.years), generator, first_year, watch, |block, _| Remembered {
+                is_perennial: plan.keeps_snow(group, block),
+                swe_bins: tally.bins(block, levels),
+                measured: plan.measured(block),
+            })
         })?;
-        tally.count(self.years.iter().map(|place| self.memory.year(*place).swe_bins.as_slice()));
+        for (group, bench) in self.benches.iter().enumerate() {
+            tally.count(plan.levels_before(group), bench.years().map(|year| year.swe_bins.as_slice()));
+        }
         Ok(self.keep())
     }
 
-    /// Runs the same realization from each of several generators, and measures the basin means alone.
+    /// Runs the same realization from the generators of each of several records, one a group, and measures the basin means
+    /// alone.
     pub fn run_records(
         &mut self,
         number: u32,
-        generators: &[&dyn Generator],
+        records: &[Vec<&dyn Generator>],
         watch: &dyn Watch,
     ) -> Result<Vec<BasinKept>, Halt> {
         let plan = self.plan;
-        self.forget(generators.iter().all(|generator| generator.drawn(number, plan.years).is_some()));
-        let keep_names = generators.iter().all(|generator| generator.keeps_names());
-        let of = |generator: &&dyn Generator| {
-            if !keep_names {
-                self.memory.clear();
-            }
-            self.run_years(number, *generator, watch, |block, means| {
-                block.copy_means(means);
-                Remembered {
-                    is_perennial: plan.keeps_snow(block),
-                    swe_bins: Vec::new(),
-                    measured: plan.measured(means),
-                }
-            })?;
-            Ok(self.keep_basin(0))
-        };
-        generators.iter().map(of).collect()
-    }
-
-    /// Forgets the years that have been run, unless they come again and there is room for more.
-    fn forget(&mut self, repeats_years: bool) {
-        if !repeats_years || self.memory.is_full() {
-            self.memory.clear();
+        let of_group = |group: usize| records.iter().map(move |record| record[group]);
+        for (group, bench) in self.benches.iter_mut().enumerate() {
+            bench.tidy(of_group(group).all(|generator| generator.drawn(number, plan.years).is_some()));
         }
+        let keep_names: Vec<bool> = (0..self.benches.len())
+            .map(|group| of_group(group).all(|generator| generator.keeps_names()))
+            .collect();
+        let of = |record: &Vec<&dyn Generator>| {
+            self.each_group(|group, bench, first_year| {
+                if !keep_names[group] {
+                    bench.forget();
+                }
+                let generator = record[group];
+                bench.run_years((number, plan.years), generator, first_year, watch, |block, means| {
+                    block.copy_means(means);
+                    Remembered {
+                        is_perennial: plan.keeps_snow(group, block),
+                        swe_bins: Vec::new(),
+                        measured: plan.measured(means),
+                    }
+                })
+            })?;
+            Ok(self.keep_basin(|_| 0))
+        };
+        records.iter().map(of).collect()
     }
 
-    /// Runs a realization from bare ground; `measure` looks at each year that has not been run before, and may use the
-    /// narrow block. Where the first year leaves perennial snow in a band of the reference, that year is run once more on
-    /// the snow it left.
-    fn run_years(
+    /// Runs the reference's group first, and then the others, whose first year is run as often as its own: all levels begin
+    /// alike.
+    fn each_group(
         &mut self,
-        number: u32,
-        generator: &dyn Generator,
-        watch: &dyn Watch,
-        measure: impl Fn(&mut YearBlock, &mut YearBlock) -> Remembered,
+        mut run: impl FnMut(usize, &mut Bench<'p>, FirstYear) -> Result<FirstYear, Halt>,
     ) -> Result<(), Halt> {
-        let Self { plan, engine, weather, means, memory, years } = self;
-        let drawn = generator.drawn(number, plan.years);
-        let (weather, spans) = match &drawn {
-            Some((record, spans)) => (*record, spans.as_slice()),
-            None => {
-                generator.fill(number, plan.years, weather);
-                (&*weather, weather.years.as_slice())
-            }
-        };
-        engine.restart();
-        years.clear();
-        let mut snow = memory.snow_at(engine.snow());
-        for span in spans {
-            if watch.wants_stop() {
-                return Err(Halt::Stopped);
-            }
-            let mut run = |memory: &mut Memory, start: SnowAt| {
-                memory.place(span.water_year, start, |snow| {
-                    engine.put_snow(snow);
-                    let year = measure(engine.year(weather.view(span))?, means);
-                    Ok::<_, Halt>((year, engine.snow()))
-                })
-            };
-            let (mut place, mut end) = run(memory, snow)?;
-            if years.is_empty() && memory.year(place).is_perennial {
-                (place, end) = run(memory, end)?;
-            }
-            years.push(place);
-            snow = end;
+        let first = self.of_reference;
+        let begun = run(first, &mut self.benches[first], FirstYear::AsReferenceDecides)?;
+        for (group, bench) in self.benches.iter_mut().enumerate().filter(|(group, _)| *group != first) {
+            run(group, bench, begun)?;
         }
         Ok(())
     }
 
-    fn keep_basin(&self, first_mean: usize) -> BasinKept {
-        let (levels, measures) = (self.plan.levels, self.plan.measures.list().len());
-        let mut kept = Vec::with_capacity(levels * measures * self.years.len());
-        for level in 0..levels {
-            for measure in 0..measures {
-                kept.extend(self.column(measure, first_mean + level));
+    /// The basin means of every level; `first_mean` says in which column those of a group begin.
+    fn keep_basin(&self, first_mean: impl Fn(&Bench<'p>) -> usize) -> BasinKept {
+        let (levels, measures) = (self.plan.levels(), self.plan.measures.list().len());
+        let mut kept = Vec::with_capacity(levels * measures * self.plan.years);
+        for bench in &self.benches {
+            for level in 0..bench.lanes.mixes() {
+                for measure in 0..measures {
+                    kept.extend(bench.column(measure, measures, first_mean(bench) + level));
+                }
             }
         }
         BasinKept(kept)
     }
 
     fn keep(&self) -> Kept {
-        let (levels, bands, measures) = (self.plan.levels, self.plan.bands, self.plan.measures.list());
+        let (levels, bands, measures) = (self.plan.levels(), self.plan.bands, self.plan.measures.list());
         let mut kept = Kept {
-            basin: self.keep_basin(self.plan.lanes.first_mix_column()),
+            basin: self.keep_basin(|bench| bench.lanes.first_mix_column()),
             band_periods: Vec::with_capacity(levels * bands * measures.len()),
             band_undefined: Vec::with_capacity(levels * bands * measures.len()),
         };
-        let mut one = Vec::with_capacity(self.years.len());
-        for level in 0..levels {
-            for band in 0..bands {
+        let mut one = Vec::with_capacity(self.plan.years);
+        for bench in &self.benches {
+            for (level, band) in
+                (0..bench.lanes.mixes()).flat_map(|level| (0..bands).map(move |band| (level, band)))
+            {
                 for (number, measure) in measures.iter().enumerate() {
                     one.clear();
-                    one.extend(self.column(number, self.plan.lanes.column(level, band)));
+                    one.extend(bench.column(number, measures.len(), bench.lanes.column(level, band)));
                     let count = |what: f64| one.iter().filter(|value| **value == what).count() as u32;
                     kept.band_undefined.push([count(NONE), count(NOT_GONE)]);
                     kept.band_periods.push(period_value(measure.kind, &mut one));
@@ -166,14 +143,5 @@ impl<'p> Workshop<'p> {
             }
         }
         kept
-    }
-
-    /// A measure of a column, year by year.
-    fn column(&self, measure: usize, column: usize) -> impl Iterator<Item = f64> {
-        let measures = self.plan.measures.list().len();
-        self.years.iter().map(move |place| {
-            let measured = &self.memory.year(*place).measured;
-            measured[measured.len() / measures * measure + column]
-        })
     }
 }

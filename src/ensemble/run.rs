@@ -11,36 +11,36 @@ use rayon::prelude::*;
 /// Runs every realization under every level, on the threads of the current rayon pool, and keeps basin and bands.
 ///
 /// Each realization depends on its number alone and results are put together in that order, so that any number of
-/// threads gives the same bits. Memory: one engine, one year block, one realization of weather and its years, measured,
-/// and one table of counted days a thread, beside what [`Seasons`] keeps.
+/// threads gives the same bits. Memory: for each group of levels one engine, one year block, one realization of weather
+/// and its years, measured, and one table of counted days a thread, beside what [`Seasons`] keeps.
 ///
 /// # Errors
 /// A ledger that does not close, or `watch` wanting to stop.
 pub fn run(plan: &Plan<'_>, bins: SweBins, watch: &dyn Watch) -> Result<Seasons, Halt> {
-    let tally = Tally::new(bins, plan.levels);
+    let tally = Tally::new(bins, plan.levels());
     let kept = each(plan, watch, |workshop, number| workshop.run(number, &tally, watch))?;
     Ok(Seasons::gather(plan, &kept, tally.finish()))
 }
 
-/// The basin means of the plan's realizations from each of several generators instead of its own, put together one
-/// generator at a time as they are asked for: the same bits as
-/// [`run`] keeps of them, with less work. All years of one name in one realization, whichever generator made it, must have
-/// the same weather, as those of one record resampled have: what has been run is not run again. Where all generators
-/// take a record's years as they are, that holds for all realizations together.
+/// The basin means of the plan's realizations from the generators of each of several records instead of its own, one for
+/// each of its groups, put together one record at a time as they are asked for: the same bits as [`run`] keeps of them,
+/// with less work. Where a group's generators all keep names, years of one name in one realization must have the same
+/// weather whichever of them made it, as those of one record resampled have: what has been run is not run again. Where they
+/// all take a record's years as they are, that holds for all realizations together.
 ///
 /// # Errors
 /// Those of [`run`].
 pub fn run_records(
     plan: &Plan<'_>,
-    generators: &[&dyn Generator],
+    records: &[Vec<&dyn Generator>],
     watch: &dyn Watch,
 ) -> Result<impl Iterator<Item = BasinSeasons>, Halt> {
-    let kept = each(plan, watch, |workshop, number| workshop.run_records(number, generators, watch))?;
+    let kept = each(plan, watch, |workshop, number| workshop.run_records(number, records, watch))?;
     let of = move |at: usize| {
         let realizations: Vec<&[f64]> = kept.iter().map(|kept| kept[at].0.as_slice()).collect();
         BasinSeasons::gather(plan, realizations.into_iter())
     };
-    Ok((0..generators.len()).map(of))
+    Ok((0..records.len()).map(of))
 }
 
 fn each<'p, T: Send>(

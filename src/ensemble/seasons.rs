@@ -37,7 +37,7 @@ impl BasinSeasons {
         kept: impl ExactSizeIterator<Item = &'k [f64]> + Clone,
     ) -> Self {
         let measures = plan.measures.list().to_vec();
-        let (levels, count) = (plan.levels, measures.len());
+        let (levels, count) = (plan.levels(), measures.len());
         let years = kept.clone().next().map_or(0, |kept| kept.len() / (levels * count));
         let mut seasons = Self {
             years: Array4::zeros((levels, count, kept.len(), years)),
@@ -63,7 +63,7 @@ impl BasinSeasons {
 impl Seasons {
     pub(super) fn gather(plan: &Plan<'_>, kept: &[Kept], swe_days: SweDays) -> Self {
         let basin = BasinSeasons::gather(plan, kept.iter().map(|kept| kept.basin.0.as_slice()));
-        let (levels, bands, count) = (plan.levels, plan.bands, basin.measures.len());
+        let (levels, bands, count) = (plan.levels(), plan.bands, basin.measures.len());
         let mut seasons = Self {
             basin,
             band_periods: Array4::zeros((levels, bands, count, kept.len())),

@@ -69,19 +69,20 @@ impl Tally {
         Self { bins, levels, tables: Mutex::default() }
     }
 
-    /// The bin of S(d) of every counted day of a year for the basin mean of each level, `[level][day]`.
-    pub fn bins(&self, block: &YearBlock) -> Vec<u32> {
+    /// The bin of S(d) of every counted day of a year for the basin mean of each of a group's levels, `[level][day]`.
+    pub fn bins(&self, block: &YearBlock, levels: usize) -> Vec<u32> {
         let bin = |level: usize, day: usize| {
             self.bins.bin(block.swe_mm[day * block.width + block.mixes_at + level]) as u32
         };
-        (0..self.levels).flat_map(|level| (0..COUNTED_DAYS).map(move |day| bin(level, day))).collect()
+        (0..levels).flat_map(|level| (0..COUNTED_DAYS).map(move |day| bin(level, day))).collect()
     }
 
-    /// Counts a realization's years, each the bins of its days.
-    pub fn count<'y>(&self, years: impl Iterator<Item = &'y [u32]>) {
+    /// Counts a realization's years under the levels from `first_level` on, each the bins of its days.
+    pub fn count<'y>(&self, first_level: usize, years: impl Iterator<Item = &'y [u32]>) {
         let mut table = self.tables().pop().unwrap_or_else(|| vec![0; self.size()]);
+        let from = first_level * COUNTED_DAYS * self.bins.count;
         for year in years {
-            for (day, bin) in table.chunks_exact_mut(self.bins.count).zip(year) {
+            for (day, bin) in table[from..].chunks_exact_mut(self.bins.count).zip(year) {
                 day[*bin as usize] += 1;
             }
         }

@@ -3,6 +3,7 @@
 use super::chance::Chances;
 use super::crossing::{Crossing, CrossingRange, crossing_range};
 use super::distribution::Distribution;
+use super::driest_and_wettest::DriestAndWettest;
 use super::exceedance::{Exceeded, add_changes, exceeded};
 use super::quantile::{quantile, sorted};
 use super::record_range::RecordRange;
@@ -55,6 +56,10 @@ pub struct LevelFindings {
     /// What 90, 70, 50, 30 and 10 % of single years bring at least; of the basin's volumes.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub exceeded: Vec<Exceeded>,
+    /// The driest and the wettest year of a realization beside the mean; of the basin's headline measure, and of the
+    /// precipitation before its date.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub driest_and_wettest: Option<DriestAndWettest>,
     /// Years with none, and years whose snow never went or whose volume never came, over all realizations.
     pub years_undefined: [usize; 2],
     /// Paired change from the reference.
@@ -181,6 +186,9 @@ impl Asked<'_> {
                 .map(|(years, _)| Distribution::of(kind, years.index_axis(Axis(0), level).iter().copied())),
             exceeded: volumes
                 .map_or(Vec::new(), |((_, area_km2), years)| exceeded(&years, area_km2, &resamples.few())),
+            driest_and_wettest: self.years.filter(|_| self.measure.has_extremes_told).and_then(
+                |(years, _)| DriestAndWettest::of(years.index_axis_move(Axis(0), level), resamples),
+            ),
             years_undefined: self.undefined[level],
             shift: None,
             percent_change: None,

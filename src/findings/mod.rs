@@ -7,6 +7,7 @@ mod break_even;
 mod chance;
 mod crossing;
 mod distribution;
+mod driest_and_wettest;
 mod exceedance;
 mod measure;
 mod normal;
@@ -30,6 +31,7 @@ pub use break_even::{
 pub use chance::{Chance, Chances};
 pub use crossing::{Crossing, CrossingRange, crossing};
 pub use distribution::{DOTS, Distribution};
+pub use driest_and_wettest::{DriestAndWettest, OverRealizations};
 pub use exceedance::{EXCEEDANCE_PCT, Exceeded};
 pub use measure::{LevelFindings, MeasureFindings};
 pub use normal::{

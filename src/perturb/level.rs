@@ -1,6 +1,7 @@
 //! Warming levels: an offset and a factor for each month (method, section 3).
 
 use super::global::GlobalWarming;
+use super::intensity::WetDayChange;
 use serde::Serialize;
 
 /// How warming is spread over months and what precipitation does with it; the same for every level of a study.
@@ -12,6 +13,9 @@ pub struct Warming {
     pub tmax_monthly_shape: [f64; 12],
     /// What precipitation does.
     pub precipitation: PrecipitationChange,
+    /// Percent by which wet days bring more for each degree of the level, compounded, where they do: how often it is wet then
+    /// changes so that the change of precipitation holds.
+    pub wet_day_intensity_pct_per_c: Option<f64>,
     /// Where the levels were stated as global warming: how they became the basin's.
     pub global: Option<GlobalWarming>,
 }
@@ -42,6 +46,7 @@ impl Default for Warming {
             tmin_monthly_shape: [1.0; 12],
             tmax_monthly_shape: [1.0; 12],
             precipitation: PrecipitationChange::PctPerC([0.0; 12]),
+            wet_day_intensity_pct_per_c: None,
             global: None,
         }
     }
@@ -80,6 +85,11 @@ impl MonthlyChange {
         let precipitation_factor = self.precipitation_factor.map(|factor| factor * (1.0 + pct / 100.0));
         Self { precipitation_factor, ..self.clone() }
     }
+
+    /// What it does to temperatures, precipitation as it was.
+    pub fn of_temperatures(&self) -> Self {
+        Self { precipitation_factor: Self::NONE.precipitation_factor, ..self.clone() }
+    }
 }
 
 impl Warming {
@@ -91,6 +101,16 @@ impl Warming {
             tmax_c: self.tmax_monthly_shape.map(|shape| level_c * shape),
             precipitation_factor: self.precipitation.factor(level_c),
         }
+    }
+
+    /// What a level does to wet days, where their intensity changes: `(1 + q/100)^w` on what they bring, and the level's
+    /// factor on the mean.
+    pub fn wet_days_at(&self, level_c: f64) -> Option<WetDayChange> {
+        let pct_per_c = self.wet_day_intensity_pct_per_c?;
+        Some(WetDayChange {
+            amount_factor: libm::pow(1.0 + pct_per_c / 100.0, level_c),
+            mean_factor: self.precipitation.factor(level_c),
+        })
     }
 
     /// Mean of a monthly shape over the days of a common year; 1 where the level is what the year warms by.

@@ -1,6 +1,7 @@
 //! Perturbation: warming levels as monthly offsets and factors, and generators of weather that could have been.
 
 mod global;
+mod intensity;
 mod level;
 mod markov_gamma;
 mod mean_change;
@@ -10,6 +11,7 @@ mod temperature_held;
 mod year_blocks;
 
 pub use global::GlobalWarming;
+pub use intensity::{Intensity, WetDayChange};
 pub use level::{MonthlyChange, PrecipitationChange, StatedChange, Warming};
 pub use markov_gamma::MarkovGamma;
 pub use mean_change::{MeanChange, mean_change_factor};
@@ -23,7 +25,7 @@ use crate::weather::{Series, YearSpan};
 /// Makes realizations: whole water years of station weather, one stream of random numbers each.
 pub trait Generator: Sync {
     /// Fills `into` with `years` years of realization number `realization`, the same for every warming level. Its values
-    /// depend on the seed and that number alone: more years begin as fewer do. Years of one name have the same weather
+    /// depend on the seed and that number alone: more years begin as fewer do, but where a mean over all of them is held. Years of one name have the same weather
     /// throughout a realization, so that one that is drawn twice need not be run twice.
     fn fill(&self, realization: u32, years: usize, into: &mut Series);
 

@@ -23,6 +23,11 @@ pub(super) fn calibration_stream(seed: u64) -> ChaCha8Rng {
     numbered(seed, 1 << 34)
 }
 
+/// The stream that decides about the wet days of a realization where warming changes them: beyond all others.
+pub(super) fn wet_day_stream(seed: u64, realization: u32) -> ChaCha8Rng {
+    numbered(seed, (1 << 35) + u64::from(realization))
+}
+
 fn numbered(seed: u64, stream: u64) -> ChaCha8Rng {
     let mut random = ChaCha8Rng::seed_from_u64(seed);
     random.set_stream(stream);

@@ -74,7 +74,7 @@ pub fn briefing_html(
                     (normal::section(study))
                     (observed::section(study, of_sites))
                     (assumed::section(study))
-                    (list_section("Cautions", &cautions::cautions(study.reader)))
+                    (list_section("Cautions", &cautions::cautions(study.reader, study.warming)))
                     h2 { "Terms" }
                     dl { @for (term, meaning) in terms::terms(study.reader) { dt { (term) } dd { (meaning) } } }
                     (sources::section())

@@ -4,6 +4,7 @@
 
 mod break_even;
 mod cells;
+mod driest_and_wettest;
 mod measures;
 mod record_range;
 mod record_years;
@@ -27,6 +28,7 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     let mut tables = measures::measure_tables(findings, units);
     let mut add = |name: &str, table: Vec<u8>| tables.push((format!("tables/{name}.csv"), table));
     add("volumes", volumes::volumes(findings, study.basin.area_km2(), units));
+    add("driest-and-wettest", driest_and_wettest::driest_and_wettest(findings, units));
     add("yardsticks", yardsticks::yardsticks(findings, units));
     add("record-range", record_range::record_range(findings, units));
     if let Some(found) = &findings.break_even {

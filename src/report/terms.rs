@@ -4,7 +4,7 @@ use super::reader::Reader;
 use crate::season::{BARE_MM, LEAST_PEAK_MM, RAIN_ON_SNOW_MM};
 
 /// Terms and their meanings, in a reader's units.
-pub(super) fn terms(reader: Reader) -> [(&'static str, String); 26] {
+pub(super) fn terms(reader: Reader) -> [(&'static str, String); 28] {
     let water_equivalent = format!("depth of water if the snow were melted, {}", reader.units.depth().word);
     let warming_level = format!(
         "degrees added to the record's temperatures, whose own climate is {}; all levels are compared with the reference",
@@ -25,7 +25,7 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 26] {
          and snowy ground",
         reader.limit(RAIN_ON_SNOW_MM)
     );
-    let terms: [(&'static str, &str); 26] = [
+    let terms: [(&'static str, &str); 28] = [
         ("Snow water equivalent (SWE)", &water_equivalent),
         ("Water year", "starts on the stated day and is named for the calendar year in which it ends"),
         ("Warming level", &warming_level),
@@ -74,6 +74,15 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 26] {
         (
             "Centroid of snowpack outflow",
             "the day on which the year's outflow balances: sum of day times outflow over outflow",
+        ),
+        (
+            "Driest year, wettest year",
+            "of the years of one realization, the one with least and the one with most of what is told: of its snow the one, of \
+             its precipitation the other",
+        ),
+        (
+            "Precipitation before a day",
+            "rain and snow over the basin from the water year's first day to the day before it",
         ),
         ("Snowpack outflow, water input", "water leaving the pack; the same with rain on bare ground"),
         (

@@ -24,6 +24,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
     let [tmin_monthly_shape, tmax_monthly_shape] = read_shapes(&mut section);
     let typed_c = levels.as_ref().map(|levels| levels.typed_c.as_slice());
     let precipitation = read_precipitation_change(&mut section, typed_c, reference_c);
+    let wet_day_intensity_pct_per_c = read_intensity(&mut section);
     section.finish();
     let Levels { typed_c: mut levels_c, global } = levels?;
     if !levels_c.contains(&reference_c) {
@@ -31,8 +32,34 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
     }
     levels_c.sort_by(f64::total_cmp);
     let reference = levels_c.iter().position(|level| *level == reference_c)?;
-    let warming = Warming { tmin_monthly_shape, tmax_monthly_shape, precipitation: precipitation?, global };
+    let warming = Warming {
+        tmin_monthly_shape,
+        tmax_monthly_shape,
+        precipitation: precipitation?,
+        wet_day_intensity_pct_per_c,
+        global,
+    };
     Some(WarmingTyped { levels_c, reference, warming })
+}
+
+/// Extremes of daily precipitation follow the water that air can hold, about 7 % a degree, or somewhat more (IPCC AR6 WGI
+/// chapter 11, from memory); a mean wet day less.
+const USUAL_INTENSITY_PCT_PER_C: std::ops::RangeInclusive<f64> = 0.0..=10.0;
+
+fn read_intensity(section: &mut Section<'_>) -> Option<f64> {
+    let key = "wet_day_intensity_pct_per_c";
+    let pct_per_c = section.number_in(
+        key,
+        -20.0..=20.0,
+        "percent per degC; the air can hold about 7 more; leave it out for wet days as they were",
+    )?;
+    if !USUAL_INTENSITY_PCT_PER_C.contains(&pct_per_c) {
+        section.unlikely(
+            key,
+            "outside 0 to 10 percent per degC; the air can hold about 7 more (Clausius-Clapeyron)",
+        );
+    }
+    Some(pct_per_c)
 }
 
 /// Shapes of minima and maxima: one for both, or of their own.

@@ -33,11 +33,20 @@ pub struct Measure {
     pub place: Place,
     /// Whether it is water that leaves the pack or reaches the ground over a part of the year: told as a volume, too.
     pub is_volume: bool,
+    /// Whether its driest and wettest years are told beside the mean.
+    pub has_extremes_told: bool,
 }
 
 impl Measure {
     pub(super) fn new(kind: Kind, name: impl Into<String>, title: impl Into<String>) -> Self {
-        Self { name: name.into(), title: title.into(), kind, place: Place::BandsAndBasin, is_volume: false }
+        Self {
+            name: name.into(),
+            title: title.into(),
+            kind,
+            place: Place::BandsAndBasin,
+            is_volume: false,
+            has_extremes_told: false,
+        }
     }
 
     /// The same of the basin mean alone.
@@ -48,6 +57,11 @@ impl Measure {
     /// The same, told as a volume, too.
     pub(super) fn told_as_volume(self) -> Self {
         Self { is_volume: true, ..self }
+    }
+
+    /// The same, its driest and wettest years told beside the mean.
+    pub(super) fn told_with_extremes(self) -> Self {
+        Self { has_extremes_told: true, ..self }
     }
 }
 

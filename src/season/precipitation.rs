@@ -1,8 +1,9 @@
-//! Snow and rain against each other and against what lies: snowfall fraction, survey SWE over precipitation, rain on snow.
+//! Snow and rain against each other and against what lies: snowfall fraction, survey SWE over precipitation, rain on snow,
+//! and all that fell before a survey.
 
 use super::sums::Sums;
 use super::{Asked, Kind, Measure, NONE, Peaks, RAIN_ON_SNOW_MM, SeasonSettings, name_of, rows};
-use crate::calendar::day_of_water_year;
+use crate::calendar::{MonthDay, day_of_water_year};
 use crate::snow::YearBlock;
 
 pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
@@ -11,12 +12,20 @@ pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
         let title = format!("{} SWE over precipitation since {since}", day.words());
         Measure::new(Kind::Share, format!("swe_{}_over_precipitation", name_of(*day)), title)
     });
+    let has_season = |(_, day): &(usize, &MonthDay)| **day != settings.water_year_starts.0;
+    let before = settings.survey_dates.iter().enumerate().filter(has_season).map(|(number, day)| {
+        let title = format!("precipitation before {}", day.words());
+        let name = format!("precipitation_before_{}_mm", name_of(*day));
+        let measure = Measure::new(Kind::AmountMm, name, title).of_basin();
+        if number == 0 { measure.told_with_extremes() } else { measure }
+    });
     [
         Measure::new(Kind::Share, "snowfall_fraction", "snowfall fraction"),
         Measure::new(Kind::DayCount, "rain_on_snow_days", "days of rain on snow"),
     ]
     .into_iter()
     .chain(over_precipitation)
+    .chain(before)
     .collect()
 }
 
@@ -43,12 +52,20 @@ pub(super) fn take(block: &mut YearBlock, _: &Peaks, asked: &Asked, into: &mut [
     rain_on_snow.fill(0.0);
     rows::count_both(rain, &block.swe_mm[..days * width], RAIN_ON_SNOW_MM, rain_on_snow);
 
+    let (over_precipitation, before) = over_precipitation.split_at_mut(surveys.len() * width);
+    let mut before = before.chunks_exact_mut(width);
     for (shares, day) in over_precipitation.chunks_exact_mut(width).zip(surveys) {
         fallen.fill(0.0);
         of_snow.add(0, day, &mut fallen);
         of_rain.add(0, day, &mut fallen);
         for ((share, fallen), swe) in shares.iter_mut().zip(&fallen).zip(block.row(&block.swe_mm, day)) {
             *share = over(*swe, *fallen);
+        }
+        // A survey on the water year's first day has no season before it.
+        if day > 0
+            && let Some(before) = before.next()
+        {
+            before.copy_from_slice(&fallen);
         }
     }
 }

@@ -6,8 +6,10 @@ use crate::snow::YearBlock;
 
 pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
     let surveys = || settings.survey_dates.iter();
-    let on_dates = surveys().map(|day| {
-        Measure::new(Kind::AmountMm, format!("swe_{}_mm", name_of(*day)), format!("{} SWE", day.words()))
+    let on_dates = surveys().enumerate().map(|(number, day)| {
+        let name = format!("swe_{}_mm", name_of(*day));
+        let measure = Measure::new(Kind::AmountMm, name, format!("{} SWE", day.words()));
+        if number == 0 { measure.told_with_extremes() } else { measure }
     });
     let over_peak = surveys().map(|day| {
         let title = format!("{} SWE over the peak", day.words());

@@ -6,8 +6,10 @@ use ndarray::{Axis, Slice};
 use proptest::prelude::*;
 use rayon::ThreadPoolBuilder;
 use thawline::calendar::MonthDay;
-use thawline::ensemble::{BasinSeasons, Plan, Seasons, Silent, SweBins, run, run_records};
-use thawline::perturb::{Generator, MeanChange, MonthlyChange, TemperatureHeld, YearBlocks};
+use thawline::ensemble::{BasinSeasons, LevelGroup, Plan, Seasons, Silent, SweBins, run, run_records};
+use thawline::perturb::{
+    Generator, Intensity, MeanChange, MonthlyChange, TemperatureHeld, WetDayChange, YearBlocks,
+};
 use thawline::season::{Measures, SeasonSettings};
 use thawline::snow::{Lanes, Path};
 use thawline::weather::Series;
@@ -17,7 +19,6 @@ pub(super) struct Study {
     pub(super) record: Series,
     lanes: Lanes,
     measures: Measures,
-    levels: usize,
     bands: usize,
 }
 
@@ -39,7 +40,6 @@ impl Study {
                 },
                 1.0,
             ),
-            levels: changes.len(),
             bands: scenario.basin.bands.len(),
         }
     }
@@ -48,23 +48,17 @@ impl Study {
         YearBlocks { record, seed: 20, mean_run_years: 2.0 }
     }
 
+    fn group<'a>(&'a self, generator: &'a dyn Generator) -> LevelGroup<'a> {
+        LevelGroup { lanes: &self.lanes, generator }
+    }
+
     fn plan<'a>(
         &'a self,
-        generator: &'a dyn Generator,
+        groups: &'a [LevelGroup<'a>],
         (realizations, years): (u32, usize),
         path: Path,
     ) -> Plan<'a> {
-        Plan {
-            lanes: &self.lanes,
-            levels: self.levels,
-            reference: 0,
-            bands: self.bands,
-            measures: &self.measures,
-            generator,
-            realizations,
-            years,
-            path,
-        }
+        Plan { groups, reference: 0, bands: self.bands, measures: &self.measures, realizations, years, path }
     }
 
     fn run(&self, threads: usize, realizations: u32, path: Path) -> Seasons {
@@ -78,9 +72,19 @@ impl Study {
         size: (u32, usize),
         path: Path,
     ) -> Seasons {
+        self.run_groups(&[self.group(from)], threads, size, path)
+    }
+
+    fn run_groups(
+        &self,
+        groups: &[LevelGroup<'_>],
+        threads: usize,
+        size: (u32, usize),
+        path: Path,
+    ) -> Seasons {
         let bins = SweBins::of_record(&self.lanes, &self.record).expect("a closed ledger");
         let pool = ThreadPoolBuilder::new().num_threads(threads).build().expect("threads");
-        pool.install(|| run(&self.plan(from, size, path), bins, &Silent)).expect("a closed ledger")
+        pool.install(|| run(&self.plan(groups, size, path), bins, &Silent)).expect("a closed ledger")
     }
 }
 
@@ -133,11 +137,12 @@ proptest! {
         let records: Vec<Series> = (0..3).map(|number| own.resampled_record(number)).collect();
         let generators: Vec<YearBlocks<'_>> = records.iter().map(|record| study.generator(record)).collect();
         let changed: Vec<MeanChange<'_>> = generators.iter().map(|generator| changed(generator)).collect();
-        let each: Vec<&dyn Generator> = changed.iter().map(|generator| generator as _).collect();
-        let plan = study.plan(&own, (5, 3), Path::Widest);
+        let each: Vec<Vec<&dyn Generator>> = changed.iter().map(|generator| vec![generator as _]).collect();
+        let groups = [study.group(&own)];
+        let plan = study.plan(&groups, (5, 3), Path::Widest);
         let found = run_records(&plan, &each, &Silent).expect("a closed ledger");
         for (generator, found) in each.iter().zip(found) {
-            let alone: BasinSeasons = study.run_from(&EveryYearNew(*generator), 2, (5, 3), Path::Widest).basin;
+            let alone: BasinSeasons = study.run_from(&EveryYearNew(generator[0]), 2, (5, 3), Path::Widest).basin;
             prop_assert_eq!(bits(&alone.years), bits(&found.years));
             prop_assert_eq!(bits(&alone.periods), bits(&found.periods));
         }
@@ -223,6 +228,78 @@ proptest! {
         prop_assert_eq!(bits(level(0)), bits(level(changes.len() - 1)));
         let bands = |level: usize| seasons.band_periods.index_axis(Axis(0), level);
         prop_assert_eq!(bits(bands(0)), bits(bands(changes.len() - 1)));
+    }
+
+    /// Levels in groups of their own that share one weather give what one group gives, to the bit: bands, basin and counted
+    /// days, the reference in any of the groups, and a first year run twice for all levels where the reference keeps snow
+    /// through it, however warm the others.
+    #[test]
+    fn groups_of_one_weather_are_one_group(mut scenario in scenarios(), mean_c in -25.0..15.0) {
+        scenario.climate.mean_c = mean_c;
+        let changes = scenario.changes();
+        let study = Study::of(&scenario, &changes);
+        let (unchanged, size) = (study.generator(&study.record), (5, 3));
+        let changed = changed(&unchanged);
+        let lanes: Vec<Lanes> = changes.iter().map(|change| scenario.lanes(std::slice::from_ref(change))).collect();
+        let apart: Vec<LevelGroup<'_>> =
+            lanes.iter().map(|lanes| LevelGroup { lanes, generator: &changed }).collect();
+        let together = [study.group(&changed)];
+        let bins = SweBins::of_record(&study.lanes, &study.record).expect("a closed ledger");
+        for reference in 0..changes.len() {
+            let [one, several] = [together.as_slice(), &apart].map(|groups| {
+                let plan = Plan { reference, ..study.plan(groups, size, Path::Widest) };
+                let records: Vec<Vec<&dyn Generator>> = [&changed as &dyn Generator, &unchanged]
+                    .map(|generator| vec![generator; groups.len()])
+                    .to_vec();
+                let of_records: Vec<Vec<u64>> = run_records(&plan, &records, &Silent)
+                    .expect("a closed ledger")
+                    .map(|found| bits(&found.years))
+                    .collect();
+                (all_bits(&run(&plan, bins, &Silent).expect("a closed ledger")), of_records)
+            });
+            prop_assert!(one == several, "groups show, reference {reference}");
+        }
+    }
+
+    /// Groups with weather of their own give what each gives when it is run by itself, where no snow is perennial; and what
+    /// is remembered of a year, in one group or from one record, is not taken for another.
+    #[test]
+    fn groups_of_several_weathers_are_runs_by_themselves(mut scenario in scenarios(), amount_factor in 0.7..1.6) {
+        scenario.climate.mean_c = 25.0;
+        let changes = scenario.changes();
+        let study = Study::of(&scenario, &changes);
+        let (unchanged, size) = (study.generator(&study.record), (4, 5));
+        let wet_days = WetDayChange { amount_factor, ..WetDayChange::NONE };
+        let weather = [WetDayChange::NONE, wet_days].map(|change| Intensity {
+            generator: &unchanged,
+            change,
+            wet_day_mm: 1.0,
+            seed: 20,
+        });
+        let lanes: Vec<Lanes> = changes.iter().map(|change| scenario.lanes(std::slice::from_ref(change))).collect();
+        let groups: Vec<LevelGroup<'_>> = lanes
+            .iter()
+            .enumerate()
+            .map(|(level, lanes)| LevelGroup { lanes, generator: &weather[level % 2] })
+            .collect();
+        let together = study.run_groups(&groups, 2, size, Path::Widest);
+        let records: Vec<Vec<&dyn Generator>> = vec![groups.iter().map(|group| group.generator).collect(); 2];
+        let plan = study.plan(&groups, size, Path::Widest);
+        for of_record in run_records(&plan, &records, &Silent).expect("a closed ledger") {
+            prop_assert_eq!(bits(&of_record.years), bits(&together.basin.years));
+        }
+        for (level, group) in groups.iter().enumerate() {
+            let every_year = EveryYearNew(group.generator);
+            let alone = [LevelGroup { generator: &every_year, ..*group }];
+            let alone = study.run_groups(&alone, 1, size, Path::Widest);
+            let of_level = |seasons: &Seasons, level: usize| {
+                let basin = bits(seasons.basin.years.index_axis(Axis(0), level));
+                let bands = bits(seasons.band_periods.index_axis(Axis(0), level));
+                let days = seasons.swe_days.counts.index_axis(Axis(0), level).to_owned();
+                (basin, bands, days)
+            };
+            prop_assert!(of_level(&together, level) == of_level(&alone, 0), "level {}", level);
+        }
     }
 
     /// A realization starts on bare ground; where the reference keeps snow through its first year, that year has been

@@ -7,7 +7,8 @@ use ndarray::{ArrayView2, Axis};
 use proptest::prelude::*;
 use thawline::ensemble::Silent;
 use thawline::findings::{
-    Crossing, Distribution, EXCEEDANCE_PCT, Findings, MeasureFindings, Questions, Runs, Spread, answer,
+    Crossing, Distribution, EXCEEDANCE_PCT, Findings, LevelFindings, MeasureFindings, Questions, Runs,
+    Spread, answer,
 };
 use thawline::perturb::{MeanChange, YearBlocks};
 use thawline::season::Kind;
@@ -96,6 +97,25 @@ fn first_crossing(levels_c: &[f64], ratios: &[f64]) -> Option<f64> {
     })
 }
 
+/// Driest and wettest years, straight from the years.
+fn holds_extremes(found: &MeasureFindings, of: &LevelFindings, years: &ArrayView2<'_, f64>) {
+    let name = &found.measure.name;
+    assert_eq!(of.driest_and_wettest.is_some(), found.measure.has_extremes_told, "{name}");
+    let Some(told) = of.driest_and_wettest else { return };
+    let each =
+        |of: fn(&[f64]) -> f64| years.rows().into_iter().map(|row| of(&row.to_vec())).collect::<Vec<f64>>();
+    for (told, expected) in [
+        (told.driest, each(|years| years.iter().copied().fold(f64::INFINITY, f64::min))),
+        (told.mean, each(mean)),
+        (told.wettest, each(|years| years.iter().copied().fold(f64::NEG_INFINITY, f64::max))),
+    ] {
+        for (told, p) in [(told.q05, 0.05), (told.median.value, 0.5), (told.q95, 0.95)] {
+            let expected = type_8(&expected, p);
+            assert!(same(told, expected, expected), "{name}: {told} for {expected}");
+        }
+    }
+}
+
 fn check(found: &MeasureFindings, years: &[ArrayView2<'_, f64>], area_km2: f64, levels_c: &[f64]) {
     let name = &found.measure.name;
     let single = |level: usize| years[level].iter().copied().collect::<Vec<f64>>();
@@ -123,6 +143,7 @@ fn check(found: &MeasureFindings, years: &[ArrayView2<'_, f64>], area_km2: f64, 
                 assert!(same(exceeded.change_pct.unwrap_or(0.0), change.unwrap_or(0.0), 100.0), "{name}");
             }
         }
+        holds_extremes(found, of, &years[level]);
         if level == 0 {
             assert!(of.shift.is_none());
             continue;

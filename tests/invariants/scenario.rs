@@ -127,7 +127,7 @@ prop_compose! {
                 levels_c.iter().zip(stated).map(|(level_c, pct)| StatedChange { level_c: *level_c, pct }).collect(),
             ),
         };
-        let warming = Warming { tmin_monthly_shape, tmax_monthly_shape, precipitation, global: None };
+        let warming = Warming { tmin_monthly_shape, tmax_monthly_shape, precipitation, ..Warming::default() };
         Scenario {
             basin: Basin {
                 latitude_deg: if climate.is_southern { -45.0 } else { 45.0 },

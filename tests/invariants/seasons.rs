@@ -49,6 +49,10 @@ fn expected(block: &YearBlock, column: usize, settings: &SeasonSettings) -> Vec<
         all.push((format!("swe_{survey}_over_peak"), or_none(naive::over_peak(&swe, day))));
         let over_precipitation = naive::over_precipitation(&swe, &rain, &snow, day);
         all.push((format!("swe_{survey}_over_precipitation"), or_none(over_precipitation)));
+        if day > 1 {
+            let fallen = naive::fallen_before(&rain, &snow, day);
+            all.push((format!("precipitation_before_{survey}_mm"), fallen));
+        }
     }
     for day in &settings.melt_shares_before {
         let share = naive::melt_share_before(&swe, &net_melt, day_of(day));

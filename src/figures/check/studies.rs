@@ -66,6 +66,7 @@ impl Study<'_> {
             kind,
             place: Place::BandsAndBasin,
             is_volume: name.starts_with("outflow"),
+            has_extremes_told: false,
         };
         let mut measures = vec![
             measure("swe_04_01_mm", "1 April SWE", Kind::AmountMm),

@@ -53,7 +53,8 @@ pub struct Asked {
 fn cause(findings: &Findings, warming: &Warming) -> &'static str {
     let is_stated =
         |level_c: &f64| warming.precipitation.factor(*level_c).iter().any(|factor| *factor != 1.0);
-    if findings.levels_c.iter().any(is_stated) {
+    let wet_days_change = warming.wet_day_intensity_pct_per_c.is_some_and(|pct_per_c| pct_per_c != 0.0);
+    if wet_days_change || findings.levels_c.iter().any(is_stated) {
         "warming with its stated change of precipitation"
     } else {
         "warming"

@@ -35,8 +35,11 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
                 (reader.amount(study.basin.precipitation_ratio(study.station_elevation_m) * study.record.mean_precipitation_mm)) " a year"
                 @if let Some(beyond) = study.beyond_stations { "; " (fixed(100.0 * beyond.share_above, 0)) " % of the area lies above the highest station and "
                     (fixed(100.0 * beyond.share_below, 0)) " % below the lowest, where results hang on the gradients alone" } }
-            dt { "Warming" } dd { "added to every day's temperatures; storms, wet days and their order stay; precipitation changes "
-                (precipitation_in_words(reader, &study.warming.precipitation))
+            dt { "Warming" } dd { "added to every day's temperatures; "
+                @match study.warming.wet_day_intensity_pct_per_c {
+                    None => { "storms, wet days and their order stay; precipitation changes " (precipitation_in_words(reader, &study.warming.precipitation)) }
+                    Some(pct_per_c) => { (wet_days_in_words(reader, study, pct_per_c)) }
+                }
                 @if let Some(global) = study.warming.global { "; levels of global warming stand as "
                     (fixed(global.local_per_global, 2)) " times what they add to the " (reader.difference(global.already_in_record_c)) " that the record already holds" } }
             dt { "Realizations" } dd { (generator_in_words(study.generator)) "; the same realization under every level"
@@ -68,6 +71,18 @@ fn generator_in_words(generator: GeneratorChoice) -> String {
                 .to_owned()
         }
     }
+}
+
+/// What becomes of wet days where warming changes them.
+fn wet_days_in_words(reader: Reader, study: &Study<'_>, pct_per_c: f64) -> String {
+    format!(
+        "wet days, those with more than {}, bring {}, and come so much more seldom or more often that mean precipitation changes \
+         {}: which days go or come is drawn for each realization, the same at every level. The record's own years keep their \
+         wet days and take the change of the mean alone",
+        reader.limit(study.wet_day_mm),
+        reader.percent_per_degree(pct_per_c),
+        precipitation_in_words(reader, &study.warming.precipitation)
+    )
 }
 
 /// `by +2.0 % per °C`; where months or levels differ, `by month and level as the scenario states`.

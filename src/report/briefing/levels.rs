@@ -1,9 +1,9 @@
 //! Tables level by level: some measures of the basin, a row each.
 
-use super::super::numbers::{DASH, counted, fixed, signed};
+use super::super::numbers::{DASH, counted, fixed, precision, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
-use crate::findings::{Findings, LevelFindings, MeasureFindings};
+use crate::findings::{DriestAndWettest, Findings, LevelFindings, MeasureFindings, OverRealizations};
 use crate::season::Outcome;
 use maud::{Markup, html};
 
@@ -38,6 +38,47 @@ pub(super) fn table(study: &Study<'_>, is_asked: impl Fn(&MeasureFindings) -> bo
                 @for at in &measure.levels { td { (cell(reader, measure, at)) } }
             } } }
         } }
+    }
+}
+
+/// The driest and the wettest year of a realization beside the mean, for each of the measures of which they are told.
+pub(super) fn driest_and_wettest(study: &Study<'_>) -> Markup {
+    let (findings, reader) = (study.findings, study.reader);
+    let told = findings.basin.iter().filter(|of| of.levels.iter().any(|at| at.driest_and_wettest.is_some()));
+    html! {
+        div.scroll { table {
+            caption {
+                "The driest and the wettest of the " (counted(findings.years, "year")) " of a realization beside their mean, each ranked by the measure \
+                 itself: median over realizations ± its Monte Carlo error, and below it the 5–95 % range. They can move while \
+                 the mean stands still."
+            }
+            thead { tr {
+                th scope="col" { "Measure" }
+                @for name in names(findings, reader) { th scope="col" { (name) } }
+            } }
+            tbody { @for measure in told { @for (year, of) in YEARS { tr {
+                th scope="row" { (measure.measure.title) ", " (year) }
+                @for at in &measure.levels {
+                    td { @match at.driest_and_wettest { None => { (DASH) } Some(years) => { (over_realizations(reader, of(&years))) } } }
+                }
+            } } } }
+        } }
+    }
+}
+
+/// The years of a realization that are told beside each other.
+const YEARS: [(&str, fn(&DriestAndWettest) -> OverRealizations); 3] =
+    [("driest year", |of| of.driest), ("mean", |of| of.mean), ("wettest year", |of| of.wettest)];
+
+/// An amount over realizations; a single one has neither error nor range.
+fn over_realizations(reader: Reader, over: OverRealizations) -> Markup {
+    html! {
+        (reader.amount(over.median.value))
+        @if let Some(error) = over.median.monte_carlo_error {
+            " ± " (precision(reader.units.depth().of(error)))
+            br;
+            (reader.amount_bare(over.q05)) "–" (reader.amount_bare(over.q95))
+        }
     }
 }
 

@@ -12,6 +12,8 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
         h2 { "Snow, level by level" }
         ul { @for sentence in &answer.amounts { li { (sentence) } } }
         (levels::table(study, |of| !of.measure.kind.is_date() && !of.measure.is_volume))
+        h3 { "The driest and the wettest years" }
+        (levels::driest_and_wettest(study))
         p { "All of it, band by band, with ranges and Monte Carlo errors, stands in " code { "tables/" } " and " code { "summary.json" } "." }
     }
 }

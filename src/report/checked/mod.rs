@@ -177,6 +177,10 @@ impl Checked<'_> {
             });
             page.line("precipitation", of_each.collect::<Vec<_>>().join(", "));
         }
+        if let Some(pct_per_c) = self.warming.wet_day_intensity_pct_per_c {
+            let more = self.reader.percent_per_degree(pct_per_c);
+            page.line("wet days", format!("{more} on each, and so many that the mean is as said"));
+        }
         let [low, high] = [self.warming.tmin_monthly_shape, self.warming.tmax_monthly_shape];
         if low.iter().chain(&high).any(|month| *month != 1.0) {
             page.line("shape for minima", format!("{low:?} from January on"));
