@@ -5,6 +5,7 @@ mod closed_form;
 mod corpus;
 mod data_faults;
 mod identities;
+mod intensity;
 mod interrupt;
 mod keys;
 mod normal;

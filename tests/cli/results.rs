@@ -4,7 +4,7 @@ use super::basin::Basin;
 use std::fs;
 use std::path::Path;
 
-fn files(folder: &Path) -> Vec<(String, Vec<u8>)> {
+pub(super) fn files(folder: &Path) -> Vec<(String, Vec<u8>)> {
     let mut found = Vec::new();
     let mut folders = vec![folder.to_owned()];
     while let Some(next) = folders.pop() {

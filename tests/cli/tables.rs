@@ -207,6 +207,34 @@ fn break_even(basin: &Basin, findings: &Value, told: &Told) {
     }
 }
 
+/// Two measures at each level: the headline, and the precipitation before its date.
+fn driest_and_wettest(basin: &Basin, findings: &Value, told: &Told) {
+    let mut rows = rows(basin, "driest-and-wettest").into_iter();
+    let told_of = |found: &&Value| found["measure"]["has_extremes_told"] == true;
+    let measures: Vec<&Value> = list(&findings["basin"]).iter().filter(told_of).collect();
+    let names: Vec<String> = measures.iter().map(|found| told.name(&found["measure"])).collect();
+    let depth = told.depth.0;
+    assert_eq!(names, [format!("swe_04_01_{depth}"), format!("precipitation_before_04_01_{depth}")]);
+    for found in measures {
+        for level in list(&found["levels"]) {
+            let row = rows.next().expect("a row a measure and level");
+            assert_eq!(row["measure"], told.name(&found["measure"]));
+            told.level(&row, level);
+            let years = [("driest", "driest_year"), ("mean", "mean"), ("wettest", "wettest_year")];
+            for (key, column) in years {
+                let over = &level["driest_and_wettest"][key];
+                hold(&row, &format!("{column}_median_{depth}"), &over["median"]["value"], told.depth.1);
+                let error = &over["median"]["monte_carlo_error"];
+                hold(&row, &format!("{column}_median_monte_carlo_error_{depth}"), error, told.depth.1);
+                for end in ["q05", "q95"] {
+                    hold(&row, &format!("{column}_{end}_{depth}"), &over[end], told.depth.1);
+                }
+            }
+        }
+    }
+    assert!(rows.next().is_none());
+}
+
 /// 365 days a level; with a start on 1 October, day 183 of a year of 365 days is 1 April (USGS usage of the water year).
 fn swe_through_year(basin: &Basin, findings: &Value, told: &Told) {
     let (found, rows) = (&findings["swe_through_year"], rows(basin, "swe-through-year"));
@@ -235,6 +263,7 @@ fn cells_are_the_summarys_numbers() {
         yardsticks(&basin, &findings, &told);
         record_range(&basin, &findings, &told);
         break_even(&basin, &findings, &told);
+        driest_and_wettest(&basin, &findings, &told);
         swe_through_year(&basin, &findings, &told);
     }
 }

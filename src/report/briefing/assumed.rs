@@ -76,7 +76,7 @@ fn generator_in_words(generator: GeneratorChoice) -> String {
 /// What becomes of wet days where warming changes them.
 fn wet_days_in_words(reader: Reader, study: &Study<'_>, pct_per_c: f64) -> String {
     format!(
-        "wet days, those with more than {}, bring {}, and come so much more seldom or more often that mean precipitation changes \
+        "wet days, those with more than {}, change by {} in what they bring, and come so much more seldom or more often that mean precipitation changes \
          {}: which days go or come is drawn for each realization, the same at every level. The record's own years keep their \
          wet days and take the change of the mean alone",
         reader.limit(study.wet_day_mm),
