@@ -18,7 +18,8 @@ use crate::weather::Series;
 
 /// Runs every realization under every level; the reference once more with temperatures held, and for every change of
 /// mean precipitation that stands beside the assumed one; and some realizations from each of a number of resampled
-/// records, under every level; and the weather alone of realizations as long as the record, to hold it against that. The same streams throughout, so that all differences are paired.
+/// records, under every level; and the weather alone of realizations as long as the record, to hold it against that. The
+/// same streams throughout, so that all differences are paired.
 pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findings, Failure> {
     let scenario = &ready.scenario;
     let (warming, realizations) = (&scenario.warming, &scenario.realizations);

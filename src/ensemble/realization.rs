@@ -70,9 +70,8 @@ impl<'p> Workshop<'p> {
         for (group, bench) in self.benches.iter_mut().enumerate() {
             bench.tidy(of_group(group).all(|generator| generator.drawn(number, plan.years).is_some()));
         }
-        let keep_names: Vec<bool> = (0..self.benches.len())
-            .map(|group| of_group(group).all(|generator| generator.keeps_names()))
-            .collect();
+        let keep_names: Vec<bool> =
+            (0..self.benches.len()).map(|group| of_group(group).all(Generator::keeps_names)).collect();
         let of = |record: &Vec<&dyn Generator>| {
             self.each_group(|group, bench, first_year| {
                 if !keep_names[group] {

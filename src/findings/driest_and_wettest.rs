@@ -29,7 +29,7 @@ pub struct OverRealizations {
 
 impl DriestAndWettest {
     /// Of years `[realization][year]`; years with none are left out, and nothing is told where no realization has a year.
-    pub(super) fn of(years: ArrayView2<'_, f64>, resamples: &Resamples) -> Option<Self> {
+    pub(super) fn of(years: &ArrayView2<'_, f64>, resamples: &Resamples) -> Option<Self> {
         let numbers = years.rows().into_iter().map(|years| {
             let mut numbers: Vec<f64> = years.iter().copied().filter(|value| value.is_finite()).collect();
             let mean = numbers.iter().sum::<f64>() / numbers.len() as f64;
@@ -73,11 +73,11 @@ mod tests {
     #[test]
     fn years_of_a_realization_are_ranked_by_themselves() {
         let years = array![[3.0, 1.0, 2.0], [NONE, 5.0, 3.0], [2.0, 10.0, 6.0], [NONE, NONE, NONE]];
-        let found = DriestAndWettest::of(years.view(), &Resamples::new(1, 4)).unwrap();
+        let found = DriestAndWettest::of(&years.view(), &Resamples::new(1, 4)).unwrap();
         let three = |over: OverRealizations| [over.q05, over.median.value, over.q95];
         assert_eq!(three(found.driest), [1.0, 2.0, 3.0]);
         assert_eq!(three(found.mean), [2.0, 4.0, 6.0]);
         assert_eq!(three(found.wettest), [3.0, 5.0, 10.0]);
-        assert!(DriestAndWettest::of(array![[NONE], [NONE]].view(), &Resamples::new(1, 2)).is_none());
+        assert!(DriestAndWettest::of(&array![[NONE], [NONE]].view(), &Resamples::new(1, 2)).is_none());
     }
 }

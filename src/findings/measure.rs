@@ -187,7 +187,7 @@ impl Asked<'_> {
             exceeded: volumes
                 .map_or(Vec::new(), |((_, area_km2), years)| exceeded(&years, area_km2, &resamples.few())),
             driest_and_wettest: self.years.filter(|_| self.measure.has_extremes_told).and_then(
-                |(years, _)| DriestAndWettest::of(years.index_axis_move(Axis(0), level), resamples),
+                |(years, _)| DriestAndWettest::of(&years.index_axis_move(Axis(0), level), resamples),
             ),
             years_undefined: self.undefined[level],
             shift: None,

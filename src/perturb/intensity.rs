@@ -79,8 +79,9 @@ impl Intensity<'_> {
         let unchanged_mm: f64 = days.iter().map(|day| precipitation_mm[*day]).sum();
         let wet_mm: Vec<f64> = wet.iter().map(|day| precipitation_mm[*day]).collect();
         let frequency_factor = mean_factor / self.change.amount_factor;
-        let last = wet.iter().copied().min_by(|a, b| lots[*a].which.total_cmp(&lots[*b].which));
-        let stays = |day: usize| lots[day].which < frequency_factor || Some(day) == last;
+        // The lowest lot always stays; a year that was drawn twice has it twice.
+        let lowest = wet.iter().map(|day| lots[*day].which).fold(f64::INFINITY, f64::min);
+        let stays = |day: usize| lots[day].which < frequency_factor.max(lowest.next_up());
         let wet_chance = (frequency_factor - 1.0) * wet.len() as f64 / dry.len() as f64;
         let becomes_wet = |day: usize| lots[day].which < wet_chance;
 

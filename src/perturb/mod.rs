@@ -26,9 +26,10 @@ use crate::weather::{Series, YearSpan};
 
 /// Makes realizations: whole water years of station weather, one stream of random numbers each.
 pub trait Generator: Sync {
-    /// Fills `into` with `years` years of realization number `realization`, the same for every warming level. Its values
-    /// depend on the seed and that number alone: more years begin as fewer do, but where a mean over all of them is held. Years of one name have the same weather
-    /// throughout a realization, so that one that is drawn twice need not be run twice.
+    /// Fills `into` with `years` years of realization number `realization`, the same for every level that runs it. Its
+    /// values depend on the seed and that number alone: more years begin as fewer do, but where a mean over all of them is
+    /// held. Years of one name have the same weather throughout a realization, so that one that is drawn twice need not be
+    /// run twice.
     fn fill(&self, realization: u32, years: usize, into: &mut Series);
 
     /// The record, and the years of it that realization number `realization` is, where it takes them as they are: then

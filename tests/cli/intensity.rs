@@ -2,7 +2,10 @@
 
 use super::basin::Basin;
 use super::results::files;
+use rand::rngs::ChaCha8Rng;
+use rand::{RngExt, SeedableRng};
 use serde_json::Value;
+use std::fmt::Write;
 
 const LEVELS: &str = "levels_c = [0, 2]";
 
@@ -31,16 +34,35 @@ fn three(level: &Value) -> [f64; 3] {
         .map(|years| level["driest_and_wettest"][years]["median"]["value"].as_f64().unwrap())
 }
 
+/// Twenty water years from 1 October 2000 of which three days in ten are wet, with 8 mm in the mean.
+fn wet_days_by_chance() -> String {
+    let first = chrono::NaiveDate::from_ymd_opt(2000, 10, 1).unwrap();
+    let end = chrono::NaiveDate::from_ymd_opt(2020, 10, 1).unwrap();
+    let mut random = ChaCha8Rng::seed_from_u64(1);
+    let mut text = String::from("date,tmin_c,tmax_c,precip_mm\n");
+    for (day, date) in first.iter_days().take_while(|date| *date < end).enumerate() {
+        let mean_c = 3.0 - 11.0 * libm::cos(std::f64::consts::TAU * (day as f64 - 105.0) / 365.25);
+        let [is_wet, amount]: [f64; 2] = random.random();
+        let wet_mm = if is_wet < 0.3 { -8.0 * libm::log(1.0 - amount) } else { 0.0 };
+        writeln!(text, "{date},{:.1},{:.1},{wet_mm:.1}", mean_c - 5.0, mean_c + 5.0 + 0.1 * (day % 2) as f64)
+            .unwrap();
+    }
+    text
+}
+
 /// At a mean that stands, to rounding, whatever the realization; the driest year is drier, the wettest wetter, and the largest
 /// day's water larger. The assumed change of the mean is the same at every level, and a stated one, 5 % per degC, is the factor
 /// 1.1025 at +2 degC.
 #[test]
 fn extremes_move_while_the_mean_stands() {
     let keys = "wet_day_intensity_pct_per_c = 15";
-    let fixed = findings(&with(keys));
+    let basin = with(keys);
+    basin.write("weather.csv", &wet_days_by_chance());
+    basin.exchange("count = 12\nyears = 5", "count = 60\nyears = 20");
+    let fixed = findings(&basin);
     let [before, after] = [0, 1].map(|at| three(&levels(&fixed, "precipitation_before_04_01_mm")[at]));
     assert!((after[1] / before[1] - 1.0).abs() < 1e-12, "{before:?} and {after:?}");
-    assert!(after[0] < 0.99 * before[0] && after[2] > 1.01 * before[2], "{before:?} and {after:?}");
+    assert!(after[0] < 0.97 * before[0] && after[2] > 1.01 * before[2], "{before:?} and {after:?}");
     let largest = levels(&fixed, "water_input_largest_1_day_mm");
     let [before, after] = [0, 1].map(|at| largest[at]["periods"]["q50"].as_f64().unwrap());
     assert!(after > 1.1 * before, "{before} and {after}");
@@ -107,7 +129,17 @@ fn threads_do_not_show() {
 fn faults_and_what_is_unlikely() {
     let refused = with("wet_day_intensity_pct_per_c = 70").run("check scenario.toml");
     assert_eq!(refused.status, 3);
-    insta::assert_snapshot!(refused.stderr, @"");
+    insta::assert_snapshot!(refused.stderr, @"
+error: warming.wet_day_intensity_pct_per_c: 70
+  --> scenario.toml:19:31
+   |
+19 | wet_day_intensity_pct_per_c = 70
+   |                               ^^ expected a number from -20 to 20
+   |
+   = help: percent per degC; the air can hold about 7 more; leave it out for wet days as they were
+
+1 fault; nothing was run
+");
     let checked = with("wet_day_intensity_pct_per_c = -2").run("check scenario.toml").stdout;
     assert!(
         checked.contains(

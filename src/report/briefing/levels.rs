@@ -66,8 +66,10 @@ pub(super) fn driest_and_wettest(study: &Study<'_>) -> Markup {
     }
 }
 
+type OfYears = fn(&DriestAndWettest) -> OverRealizations;
+
 /// The years of a realization that are told beside each other.
-const YEARS: [(&str, fn(&DriestAndWettest) -> OverRealizations); 3] =
+const YEARS: [(&str, OfYears); 3] =
     [("driest year", |of| of.driest), ("mean", |of| of.mean), ("wettest year", |of| of.wettest)];
 
 /// An amount over realizations; a single one has neither error nor range.
