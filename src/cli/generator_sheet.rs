@@ -28,5 +28,5 @@ pub(super) fn generator_sheet(ready: &Ready, watch: &dyn Watch) -> Result<Genera
     let made = ready.recipe().of(record);
     let realizations =
         snow.each_realization(&*made, realizations_of_the_sheet(ready), record.years.len(), watch, sample)?;
-    Ok(GeneratorSheet::of(&questions, &of_record, &realizations))
+    Ok(GeneratorSheet { fitted: made.fitted(), ..GeneratorSheet::of(&questions, &of_record, &realizations) })
 }

@@ -3,6 +3,7 @@
 use super::numbers::{DASH, counted, fixed, trimmed};
 use super::reader::Reader;
 use crate::findings::{GeneratorSheet, Quantity, SheetLine, SheetStatistic, Subject, Verdict};
+use crate::perturb::{AmountLaw, ChainOrder, Fitted, FittedMonth};
 
 /// A number of the sheet in the reader's units, without its unit.
 fn bare(reader: Reader, quantity: Quantity, value: f64) -> String {
@@ -112,7 +113,24 @@ pub(super) fn sentences(sheet: &GeneratorSheet, reader: Reader) -> Vec<String> {
             fixed(sheet.realizations as f64, 0),
         ));
     }
+    said.extend(sheet.fitted.as_ref().map(|fitted| fitted_in_words(fitted, reader)));
     said
+}
+
+/// What was fitted, month by month.
+fn fitted_in_words(fitted: &Fitted, reader: Reader) -> String {
+    let months = |is_one: &dyn Fn(&FittedMonth) -> bool| {
+        counted(fitted.months.iter().filter(|month| is_one(month)).count(), "month")
+    };
+    format!(
+        "Fitted to the record: whether a day is wet, that is above {}, hangs on the day before in {} and on the two days \
+         before in {}; amounts are gamma in {} and mixed exponential in {}, each by the Bayesian information criterion.",
+        reader.limit(fitted.wet_above_mm),
+        months(&|month| month.chain_order == ChainOrder::First),
+        months(&|month| month.chain_order == ChainOrder::Second),
+        months(&|month| matches!(month.amounts, AmountLaw::Gamma { .. })),
+        months(&|month| matches!(month.amounts, AmountLaw::MixedExponential { .. })),
+    )
 }
 
 /// Where survey-date SWE from the weather that was made is not like that from the record, with its numbers; nothing where it
@@ -177,6 +195,7 @@ mod tests {
             lines_outside: outside,
             outside_by_chance: 0.2,
             largest_day_mm: LargestDay { record: Some(101.6), realizations: Some(101.6) },
+            fitted: None,
             statistics,
         }
     }
@@ -194,6 +213,29 @@ mod tests {
         let both = snow_mismatch(&sheet(127.0, Below, Above), us).unwrap();
         assert!(both.contains("mean 5.0 in from the record, 10.0 to 15.0 in 9 of 10"), "{both}");
         assert!(both.contains("; standard deviation 11.8 in"), "{both}");
+    }
+
+    #[test]
+    fn what_was_fitted_is_said() {
+        let month = |at: usize| FittedMonth {
+            chain_order: if at == 3 { ChainOrder::Second } else { ChainOrder::First },
+            amounts: if at < 4 {
+                AmountLaw::Gamma { shape: 0.7, scale_mm: 9.0 }
+            } else {
+                AmountLaw::MixedExponential { smaller_share: 0.4, smaller_mean_mm: 3.0, larger_mean_mm: 12.0 }
+            },
+        };
+        let fitted = Fitted { wet_above_mm: 1.27, months: std::array::from_fn(month), wet_month_spread: 0.2 };
+        let said = fitted_in_words(&fitted, reader(UnitSystem::Metric));
+        for part in [
+            "above 1.27 mm",
+            "day before in 11 months",
+            "two days before in 1 month;",
+            "gamma in 4 months",
+            "exponential in 8",
+        ] {
+            assert!(said.contains(part), "{part}: {said}");
+        }
     }
 
     #[test]

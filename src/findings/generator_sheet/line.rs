@@ -158,6 +158,10 @@ pub enum Statistic {
     TotalMean,
     /// Standard deviation over years.
     TotalDeviation,
+    /// The driest year.
+    TotalLowest,
+    /// The wettest year.
+    TotalHighest,
     /// Correlation of a year with the year before it.
     TotalLag1,
     /// Most years in succession below the median of all.
@@ -215,6 +219,8 @@ impl Statistic {
             Self::LargestDay => known(WetDays, DepthMm, "largest_day_mean", "largest day of a year"),
             Self::TotalMean => known(Totals, DepthMm, "total_mean", "mean"),
             Self::TotalDeviation => known(Totals, DepthMm, "total_standard_deviation", "standard deviation"),
+            Self::TotalLowest => known(Totals, DepthMm, "total_driest", "driest of the years"),
+            Self::TotalHighest => known(Totals, DepthMm, "total_wettest", "wettest of the years"),
             Self::TotalLag1 => {
                 known(Totals, Correlation, "total_lag1_correlation", "correlation with the year before")
             }

@@ -19,6 +19,7 @@ pub use line::{Period, Quantity, Statistic, Subject};
 pub use sample::{SheetQuestions, SheetSample};
 
 use crate::calendar::MonthDay;
+use crate::perturb::Fitted;
 use judge::outside_by_chance;
 use serde::Serialize;
 
@@ -44,6 +45,9 @@ pub struct GeneratorSheet {
     pub outside_by_chance: f64,
     /// The largest day of all: reported, not judged.
     pub largest_day_mm: LargestDay,
+    /// What the generator took from its record, where it fits anything. Whoever has the generator adds it.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub fitted: Option<Fitted>,
     /// The statistics.
     pub statistics: Vec<SheetStatistic>,
 }
@@ -132,6 +136,7 @@ impl GeneratorSheet {
                 record: record.largest_day_mm,
                 realizations: realizations.iter().filter_map(|sample| sample.largest_day_mm).reduce(f64::max),
             },
+            fitted: None,
             statistics,
         }
     }

@@ -109,6 +109,8 @@ impl SheetQuestions {
         vec![
             each(Statistic::TotalMean, parts(), |part| mean(&days.totals_mm(part))),
             each(Statistic::TotalDeviation, parts(), |part| standard_deviation(&days.totals_mm(part))),
+            each(Statistic::TotalLowest, parts(), |part| days.totals_mm(part).into_iter().reduce(f64::min)),
+            each(Statistic::TotalHighest, parts(), |part| days.totals_mm(part).into_iter().reduce(f64::max)),
             each(Statistic::TotalLag1, parts(), |part| {
                 lag1_correlation(&days.totals_mm(part), &days.follows)
             }),

@@ -81,6 +81,8 @@ fn totals_of_months_and_of_seasons() {
     near(value(&sample, Statistic::TotalMean, Period::CoolSeason), 30.0 + 181.0 * 0.3);
     near(value(&sample, Statistic::TotalMean, Period::WaterYear), 34.0 + 363.0 * 0.3);
     near(value(&sample, Statistic::TotalDeviation, Period::WaterYear), (1400.0_f64 / 3.0).sqrt());
+    near(value(&sample, Statistic::TotalLowest, Period::CoolSeason), 10.0 + 181.0 * 0.3);
+    near(value(&sample, Statistic::TotalHighest, Period::WaterYear), 64.0 + 363.0 * 0.3);
     // Products of neighbours: -20 * 0 + 0 * -10 + -10 * 30.
     near(value(&sample, Statistic::TotalLag1, Period::CoolSeason), -300.0 / 1400.0);
     // The median of 10, 20, 30, 60 is 25: the first year is below, the second is not, the third is.

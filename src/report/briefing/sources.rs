@@ -3,10 +3,17 @@
 use maud::{Markup, html};
 
 /// What was used, and who published it.
-const SOURCES: [(&str, &str); 14] = [
+const SOURCES: [(&str, &str); 18] = [
     ("Degree-days of a day's sine between minimum and maximum", "Baskerville & Emin 1969"),
     ("Rain and snow by a smooth curve, where chosen", "Dai 2008, Geophysical Research Letters 35 L12802"),
     ("Years resampled in runs (stationary bootstrap)", "Politis & Romano 1994"),
+    (
+        "Chains of wet and dry days, and their order",
+        "Richardson 1981, Water Resources Research 17:182; Katz 1981; Schwarz 1978",
+    ),
+    ("Amounts of mixed exponentials", "Wilks 1999, Agricultural and Forest Meteorology 93:153"),
+    ("Temperatures that remember the day before", "Matalas 1967; Richardson 1981"),
+    ("Variance from year to year given back (nesting)", "Srikanthan & Pegram 2009"),
     ("Quantiles, type 8", "Hyndman & Fan 1996, The American Statistician 50:361"),
     ("Monte Carlo error by resampling, and by the infinitesimal jackknife", "Efron & Tibshirani 1993"),
     ("Outflow centroid", "Stewart, Cayan & Dettinger 2005"),
