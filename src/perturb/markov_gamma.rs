@@ -117,3 +117,6 @@ impl Generator for MarkovGamma {
         })
     }
 }
+
+#[cfg(test)]
+mod tests;

@@ -51,3 +51,6 @@ impl Law {
         }
     }
 }
+
+#[cfg(test)]
+mod tests;

@@ -42,7 +42,7 @@ impl Nest {
             own: own_normal,
             own_memory: LagOne::of(&own_m0, &own_m0, &own_m1),
             target,
-            target_memory: LagOne::of(&m0, &m0, &memory_of_years(&m1, pairs)),
+            target_memory: LagOne::of(&m0, &m0, &memory_of_years(&m0, &m1, pairs)),
         };
     }
 }
@@ -71,25 +71,26 @@ fn years_together(
     (normal, m0, m1)
 }
 
-/// The memory from year to year that is kept: that of precipitation with precipitation, and of each season's temperature
-/// with itself. A sample's lag-1 correlation lies below that of what it is drawn from by about `(1 + 4r)/n` (Kendall
-/// 1954), which is put back.
-fn memory_of_years(m1: &Matrix<SEASONAL>, pairs: usize) -> Matrix<SEASONAL> {
-    let mut kept = [[0.0; SEASONAL]; SEASONAL];
+/// The memory from year to year that is kept: each season's precipitation and temperature remember their own of the year
+/// before, and of the others what follows from being correlated with them, `sqrt(r_i r_j) m0_ij`: a year is remembered as
+/// a whole. Memories of single pairs, some kept and some not, contradict the strong correlations within a year, and all
+/// memory would have to be made smaller until they do not.
+///
+/// A sample's lag-1 correlation lies below that of what it is drawn from by about `(1 + 4r)/n` (Kendall 1954), which is put
+/// back.
+fn memory_of_years(m0: &Matrix<SEASONAL>, m1: &Matrix<SEASONAL>, pairs: usize) -> Matrix<SEASONAL> {
     if pairs < LEAST_PAIRS {
-        return kept;
+        return [[0.0; SEASONAL]; SEASONAL];
     }
     let count = pairs as f64;
-    for row in 0..SEASONAL {
-        for column in 0..SEASONAL {
-            let are_amounts = row % 2 == 0 && column % 2 == 0;
-            if row == column {
-                let unbiased = (count * m1[row][row] + 1.0) / (count - 4.0);
-                kept[row][row] = unbiased.clamp(-STRONGEST_MEMORY, STRONGEST_MEMORY);
-            } else if are_amounts {
-                kept[row][column] = m1[row][column].clamp(-STRONGEST_MEMORY, STRONGEST_MEMORY);
-            }
-        }
-    }
-    kept
+    let own: [f64; SEASONAL] = std::array::from_fn(|at| {
+        let unbiased = (count * m1[at][at] + 1.0) / (count - 4.0);
+        unbiased.clamp(-STRONGEST_MEMORY, STRONGEST_MEMORY)
+    });
+    std::array::from_fn(|row| {
+        std::array::from_fn(|column| {
+            let both = libm::sqrt(own[row].max(0.0) * own[column].max(0.0));
+            if row == column { own[row] } else { both * m0[row][column] }
+        })
+    })
 }
