@@ -60,7 +60,7 @@ fn daily_record() -> Series {
             let from_midsummer = (f64::from(date.ordinal()) - 200.0).abs().min(165.0);
             record.mean_c.push(18.0 - 0.15 * from_midsummer + f64::from(day % 17) - 8.0);
             record.half_range_c.push(3.0 + 0.5 * f64::from(day % 7));
-            record.precipitation_mm.push(if day % 3 == 0 {
+            record.precipitation_mm.push(if day.is_multiple_of(3) {
                 0.3 + f64::from(day * day % 997) / 40.0
             } else {
                 0.0

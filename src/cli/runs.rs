@@ -15,6 +15,7 @@ use crate::perturb::{Generator, MeanChange, TemperatureHeld};
 use crate::season::Measures;
 use crate::snow::{OpenLedger, Path};
 use crate::weather::Series;
+use rayon::prelude::*;
 
 /// Runs every realization under every level; the reference once more with temperatures held, and for every change of
 /// mean precipitation that stands beside the assumed one; and some realizations from each of a number of resampled
@@ -64,8 +65,8 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     }
     let resampled = |number: u32| recipe.resampled_record(&ready.drawn_from, number);
     let records: Vec<Series> = (0..RESAMPLED_RECORDS).map(resampled).collect();
-    let made_of_records: Vec<Box<dyn Generator + '_>> =
-        records.iter().map(|record| recipe.of(record)).collect();
+    let made_of_records: Vec<Box<dyn Generator + Send + '_>> =
+        records.par_iter().map(|record| recipe.of(record)).collect();
     let weather_of_records: Vec<_> = made_of_records.iter().map(|made| groups.weather(&**made)).collect();
     let changed: Vec<_> = weather_of_records.iter().map(|weather| groups.changed(weather)).collect();
     let of_each_record: Vec<Vec<&dyn Generator>> =

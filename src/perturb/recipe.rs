@@ -61,7 +61,7 @@ const LEAST_WET_DAYS: usize = 30;
 
 impl Recipe {
     /// Makes the generator from a record that is corrected for catch.
-    pub fn of<'r>(&self, record: &'r Series) -> Box<dyn Generator + 'r> {
+    pub fn of<'r>(&self, record: &'r Series) -> Box<dyn Generator + Send + 'r> {
         match self.choice {
             GeneratorChoice::YearBlocks { mean_run_years } => {
                 Box::new(YearBlocks { record, seed: self.seed, mean_run_years })

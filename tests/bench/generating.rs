@@ -2,7 +2,7 @@
 
 use super::{Bench, seconds};
 use thawline::calendar::{MonthDay, WaterYearStart};
-use thawline::ensemble::{Plan, Silent, SweBins, run};
+use thawline::ensemble::{LevelGroup, Plan, Silent, SweBins, run};
 use thawline::perturb::{Generator, GeneratorChoice, MarkovGamma, Recipe};
 use thawline::season::{Measures, SeasonSettings};
 use thawline::snow::Path;
@@ -40,12 +40,10 @@ pub fn print_share() {
     );
     let lanes = case.lanes();
     let plan = Plan {
-        lanes: &lanes,
-        levels: LEVELS,
+        groups: &[LevelGroup { lanes: &lanes, generator: &generator }],
         reference: 0,
         bands: BANDS,
         measures: &measures,
-        generator: &generator,
         realizations: REALIZATIONS,
         years: YEARS,
         path: Path::default(),

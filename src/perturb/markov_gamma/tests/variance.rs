@@ -114,11 +114,6 @@ fn realizations_centre_on_the_record() {
             _ => 0.1,
         };
         let found = mean(&values);
-        println!(
-            "{name}: {found:.4} for {:.4} +- {allowed:.4} spread {:.4}",
-            expected[at],
-            deviation(&values)
-        );
         if (found - expected[at]).abs() > allowed {
             off.push(format!("{name}: {found:.4} for {:.4}, allowed {allowed:.4}", expected[at]));
         }
