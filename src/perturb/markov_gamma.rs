@@ -105,3 +105,6 @@ impl Generator for MarkovGamma {
         }
     }
 }
+
+#[cfg(test)]
+mod tests;
