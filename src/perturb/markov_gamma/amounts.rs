@@ -37,3 +37,6 @@ impl Law {
         }
     }
 }
+
+#[cfg(test)]
+mod tests;

@@ -91,3 +91,6 @@ fn between(date: NaiveDate) -> ([usize; 2], f64) {
         ([month, after], (through - own) / (own + DAYS[after] / 2.0))
     }
 }
+
+#[cfg(test)]
+mod tests;

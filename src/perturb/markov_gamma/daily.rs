@@ -120,3 +120,6 @@ impl Daily {
         DrawnDay { excess_mm, usual_c: mean.median, departure_c, half_range_c }
     }
 }
+
+#[cfg(test)]
+mod tests;

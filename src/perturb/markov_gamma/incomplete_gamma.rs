@@ -55,3 +55,6 @@ fn fraction(a: f64, x: f64) -> f64 {
 fn away_from_zero(value: f64) -> f64 {
     if value.abs() < SMALLEST { SMALLEST } else { value }
 }
+
+#[cfg(test)]
+mod tests;

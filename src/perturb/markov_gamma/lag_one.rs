@@ -162,3 +162,6 @@ fn inverse<const N: usize>(a: &Matrix<N>) -> Matrix<N> {
     }
     inverse
 }
+
+#[cfg(test)]
+mod tests;

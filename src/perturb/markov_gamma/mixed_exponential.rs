@@ -146,3 +146,6 @@ fn extrapolated([first, second, third]: [[f64; 3]; 3]) -> [f64; 3] {
     }
     leap
 }
+
+#[cfg(test)]
+mod tests;

@@ -89,3 +89,6 @@ fn score_of(share: f64) -> f64 {
     }
     if share < 0.5 { score } else { -score }
 }
+
+#[cfg(test)]
+mod tests;

@@ -176,3 +176,6 @@ fn log_likelihood([dry, wet]: &[f64; 2]) -> f64 {
     let part = |count: f64| if count > 0.0 { count * libm::log(count / all) } else { 0.0 };
     part(*dry) + part(*wet)
 }
+
+#[cfg(test)]
+mod tests;

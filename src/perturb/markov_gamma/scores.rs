@@ -54,3 +54,6 @@ pub fn mean_product(pairs: impl Iterator<Item = (f64, f64)>) -> f64 {
     }
     if count > 0.0 { sum / count } else { 0.0 }
 }
+
+#[cfg(test)]
+mod tests;

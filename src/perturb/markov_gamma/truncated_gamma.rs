@@ -165,3 +165,6 @@ pub fn standard_gamma(shape: f64, random: &mut impl Rng) -> f64 {
         }
     }
 }
+
+#[cfg(test)]
+mod tests;
