@@ -9,6 +9,7 @@ mod case;
 mod closed_season;
 mod days;
 mod scores;
+mod seattle;
 mod statistics;
 mod still_year;
 mod trends;
