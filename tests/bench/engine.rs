@@ -2,11 +2,14 @@
 //! mountain station whose low bands are bare for half the year.
 //!
 //! Both sides fill the same six tables of a year (SWE, net melt, outflow, bare-ground rain, rain, snowfall); the engine
-//! also makes the basin means and closes its ledgers. `cargo bench` prints lane-days per second and, at the end, their ratio.
+//! also makes the basin means and closes its ledgers. `cargo bench` prints lane-days per second and, at the end, their ratio,
+//! and what part of a run's time it takes to generate its weather.
 
 #[path = "../naive.rs"]
 #[allow(dead_code, reason = "the tests use the rest of it")]
 mod naive;
+
+mod generating;
 
 use chrono::{Datelike, NaiveDate};
 use divan::Bencher;
@@ -31,6 +34,7 @@ fn main() {
     divan::main();
     if !std::env::args().any(|argument| argument == "--test" || argument == "--list") {
         print_ratios();
+        generating::print_share();
     }
 }
 
