@@ -2,7 +2,11 @@
 
 use super::{Bench, seconds};
 use thawline::calendar::{MonthDay, WaterYearStart};
+<<<<<<< HEAD
 use thawline::ensemble::{LevelGroup, Plan, Silent, SweBins, run};
+=======
+use thawline::ensemble::{Plan, Silent, SweBins, run};
+>>>>>>> gentests
 use thawline::perturb::{Generator, GeneratorChoice, MarkovGamma, Recipe};
 use thawline::season::{Measures, SeasonSettings};
 use thawline::snow::Path;
@@ -40,10 +44,19 @@ pub fn print_share() {
     );
     let lanes = case.lanes();
     let plan = Plan {
+<<<<<<< HEAD
         groups: &[LevelGroup { lanes: &lanes, generator: &generator }],
         reference: 0,
         bands: BANDS,
         measures: &measures,
+=======
+        lanes: &lanes,
+        levels: LEVELS,
+        reference: 0,
+        bands: BANDS,
+        measures: &measures,
+        generator: &generator,
+>>>>>>> gentests
         realizations: REALIZATIONS,
         years: YEARS,
         path: Path::default(),
