@@ -2,11 +2,7 @@
 
 use super::{Bench, seconds};
 use thawline::calendar::{MonthDay, WaterYearStart};
-<<<<<<< HEAD
 use thawline::ensemble::{LevelGroup, Plan, Silent, SweBins, run};
-=======
-use thawline::ensemble::{Plan, Silent, SweBins, run};
->>>>>>> gentests
 use thawline::perturb::{Generator, GeneratorChoice, MarkovGamma, Recipe};
 use thawline::season::{Measures, SeasonSettings};
 use thawline::snow::Path;
@@ -44,19 +40,10 @@ pub fn print_share() {
     );
     let lanes = case.lanes();
     let plan = Plan {
-<<<<<<< HEAD
         groups: &[LevelGroup { lanes: &lanes, generator: &generator }],
         reference: 0,
         bands: BANDS,
         measures: &measures,
-=======
-        lanes: &lanes,
-        levels: LEVELS,
-        reference: 0,
-        bands: BANDS,
-        measures: &measures,
-        generator: &generator,
->>>>>>> gentests
         realizations: REALIZATIONS,
         years: YEARS,
         path: Path::default(),

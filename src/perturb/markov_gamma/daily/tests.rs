@@ -2,19 +2,12 @@ use super::super::common_year::CommonYear;
 use super::super::lag_one::LagOne;
 use super::super::mixed_exponential::MixedExponential;
 use super::super::normal_score::Shape;
-<<<<<<< HEAD
 use super::super::occurrence::Occurrence;
-=======
-use super::super::occurrence::{Occurrence, Order};
->>>>>>> gentests
 use super::super::temperature::{Temperature, Usual};
 use super::super::truncated_gamma::TruncatedGamma;
 use super::{Daily, Law, Walk};
 use crate::calendar::{MonthDay, WaterYearStart};
-<<<<<<< HEAD
 use crate::perturb::ChainOrder;
-=======
->>>>>>> gentests
 use rand::SeedableRng;
 use rand::rngs::ChaCha8Rng;
 
@@ -27,11 +20,7 @@ fn steady(law: Law) -> Daily {
     Daily {
         wet_above_mm: 0.0,
         occurrence: Occurrence {
-<<<<<<< HEAD
             orders: [ChainOrder::First; 12],
-=======
-            orders: [Order::First; 12],
->>>>>>> gentests
             chances: vec![[0.2, 0.6, 0.2, 0.6]; 365],
             spread: 0.0,
         },

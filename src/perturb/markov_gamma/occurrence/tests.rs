@@ -1,13 +1,8 @@
 use super::super::common_year::CommonYear;
 use super::super::record_days::{RecordDay, RecordDays};
-<<<<<<< HEAD
 use super::{Chances, Occurrence, variance_of_wet_days, wet_days_of};
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::perturb::ChainOrder;
-=======
-use super::{Chances, Occurrence, Order, variance_of_wet_days, wet_days_of};
-use crate::calendar::{MonthDay, WaterYearStart};
->>>>>>> gentests
 use rand::SeedableRng;
 use rand::rngs::ChaCha8Rng;
 
@@ -21,11 +16,7 @@ fn year() -> CommonYear {
 
 /// A chain that is the same all year.
 fn steady(chances: Chances, spread: f64) -> Occurrence {
-<<<<<<< HEAD
     Occurrence { orders: [ChainOrder::Second; 12], chances: vec![chances; 365], spread }
-=======
-    Occurrence { orders: [Order::Second; 12], chances: vec![chances; 365], spread }
->>>>>>> gentests
 }
 
 /// So many days of a chain, one after another.
@@ -103,11 +94,7 @@ fn variance_of_wet_days_in_stretches() {
 fn first_order_comes_back() {
     let year = year();
     let found = fitted(&record_of(&wet_days(&steady(RICHARDSON, 0.0), 150 * 365, 4), &year), &year);
-<<<<<<< HEAD
     assert_eq!(found.orders, [ChainOrder::First; 12]);
-=======
-    assert_eq!(found.orders, [Order::First; 12]);
->>>>>>> gentests
     for [dry_dry, dry_wet, wet_dry, wet_wet] in &found.chances {
         assert!(dry_dry == wet_dry && dry_wet == wet_wet, "what was two days before does not matter");
         assert!((dry_dry - 0.2).abs() < 0.052 && (dry_wet - 0.6).abs() < 0.052, "{dry_dry} {dry_wet}");
@@ -123,11 +110,7 @@ fn second_order_comes_back() {
     const TRUE: Chances = [0.15, 0.45, 0.35, 0.75];
     let year = year();
     let found = fitted(&record_of(&wet_days(&steady(TRUE, 0.0), 150 * 365, 5), &year), &year);
-<<<<<<< HEAD
     assert_eq!(found.orders, [ChainOrder::Second; 12]);
-=======
-    assert_eq!(found.orders, [Order::Second; 12]);
->>>>>>> gentests
     for chances in &found.chances {
         let off = chances.iter().zip(TRUE).map(|(found, expected)| (found - expected).abs());
         assert!(off.fold(0.0, f64::max) < 0.09, "{chances:?} for {TRUE:?}");
