@@ -4,6 +4,7 @@ pub mod basin;
 mod closed_form;
 mod corpus;
 mod data_faults;
+mod drawn_weather;
 mod generator_sheet;
 mod identities;
 mod intensity;
