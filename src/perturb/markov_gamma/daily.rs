@@ -76,6 +76,10 @@ impl Daily {
                     break;
                 }
             }
+            // A record without a wet day, as resampling may make one, draws none either: any law will do.
+            if amounts_mm.is_empty() {
+                amounts_mm.push(record.wet_above_mm + 1.0);
+            }
             Law::of(&amounts_mm, record.wet_above_mm)
         };
         let laws: [Law; 12] = std::array::from_fn(law);
