@@ -5,7 +5,7 @@ use super::level_groups::LevelGroups;
 use crate::baseline::Seasons as SeasonsOf;
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, Watch, run_records};
 use crate::findings::{BreakEven, BreakEvenLevel, Reached, Root, break_even_pct, quantile, sorted};
-use crate::perturb::{Generator, MeanChange, MonthlyChange};
+use crate::perturb::{Generator, Kept, MeanChange, MonthlyChange};
 use crate::season::Measures;
 use crate::weather::Series;
 
@@ -26,8 +26,10 @@ pub(super) fn break_even(
 ) -> Result<BreakEven, Halt> {
     let all = plan.realizations;
     let changes = &groups.changes;
-    let weather = groups.weather(made);
     let realizations = plan.realizations.min(BREAK_EVEN_REALIZATIONS);
+    // Every step towards the root runs them again.
+    let kept = Kept::of(made, realizations, plan.years);
+    let weather = groups.weather(&kept);
     let measures = Measures::of_snow(plan.measures.settings().clone(), ready.basin.area_km2());
     let plan = Plan { realizations, measures: &measures, ..*plan };
     let medians = |pct: &[f64]| {

@@ -3,6 +3,7 @@
 mod fitted;
 mod global;
 mod intensity;
+mod kept;
 mod level;
 mod markov_gamma;
 mod mean_change;
@@ -14,6 +15,7 @@ mod year_blocks;
 pub use fitted::{AmountLaw, ChainOrder, Fitted, FittedMonth};
 pub use global::GlobalWarming;
 pub use intensity::{Intensity, WetDayChange};
+pub use kept::Kept;
 pub use level::{MonthlyChange, PrecipitationChange, StatedChange, Warming};
 pub use markov_gamma::MarkovGamma;
 pub use mean_change::{MeanChange, mean_change_factor};

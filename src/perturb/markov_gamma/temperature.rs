@@ -91,7 +91,7 @@ impl Temperature {
     pub fn departures(&self, day: usize, month: usize, is_wet: bool, scores: &[f64; 2]) -> [f64; 2] {
         let state = usize::from(is_wet);
         let (usual, shapes) = (&self.usual[day][state], &self.shapes[month][state]);
-        [0, 1].map(|variable| usual[variable].spread * shapes[variable].value(scores[variable]))
+        [usual[0].spread * shapes[0].value(scores[0]), usual[1].spread * shapes[1].value(scores[1])]
     }
 }
 
