@@ -119,17 +119,23 @@ pub(super) fn sentences(sheet: &GeneratorSheet, reader: Reader) -> Vec<String> {
 
 /// What was fitted, month by month.
 fn fitted_in_words(fitted: &Fitted, reader: Reader) -> String {
-    let months = |is_one: &dyn Fn(&FittedMonth) -> bool| {
-        counted(fitted.months.iter().filter(|month| is_one(month)).count(), "month")
+    let months = |what: &str, is_one: &dyn Fn(&FittedMonth) -> bool| {
+        let count = fitted.months.iter().filter(|month| is_one(month)).count();
+        (count > 0).then(|| format!("{what} in {}", counted(count, "month")))
     };
+    let both = |parts: [Option<String>; 2]| parts.into_iter().flatten().collect::<Vec<_>>().join(" and ");
     format!(
-        "Fitted to the record: whether a day is wet, that is above {}, hangs on the day before in {} and on the two days \
-         before in {}; amounts are gamma in {} and mixed exponential in {}, each by the Bayesian information criterion.",
+        "Fitted to the record: whether a day is wet, that is above {}, hangs {}; amounts are {}, each by the Bayesian \
+         information criterion.",
         reader.limit(fitted.wet_above_mm),
-        months(&|month| month.chain_order == ChainOrder::First),
-        months(&|month| month.chain_order == ChainOrder::Second),
-        months(&|month| matches!(month.amounts, AmountLaw::Gamma { .. })),
-        months(&|month| matches!(month.amounts, AmountLaw::MixedExponential { .. })),
+        both([
+            months("on the day before", &|month| month.chain_order == ChainOrder::First),
+            months("on the two days before", &|month| month.chain_order == ChainOrder::Second),
+        ]),
+        both([
+            months("gamma", &|month| matches!(month.amounts, AmountLaw::Gamma { .. })),
+            months("mixed exponential", &|month| matches!(month.amounts, AmountLaw::MixedExponential { .. })),
+        ]),
     )
 }
 
@@ -226,16 +232,18 @@ mod tests {
             },
         };
         let fitted = Fitted { wet_above_mm: 1.27, months: std::array::from_fn(month), wet_month_spread: 0.2 };
-        let said = fitted_in_words(&fitted, reader(UnitSystem::Metric));
-        for part in [
-            "above 1.27 mm",
-            "day before in 11 months",
-            "two days before in 1 month;",
-            "gamma in 4 months",
-            "exponential in 8",
-        ] {
-            assert!(said.contains(part), "{part}: {said}");
-        }
+        assert_eq!(
+            fitted_in_words(&fitted, reader(UnitSystem::Metric)),
+            "Fitted to the record: whether a day is wet, that is above 1.27 mm, hangs on the day before in 11 months and on the \
+             two days before in 1 month; amounts are gamma in 4 months and mixed exponential in 8 months, each by the Bayesian \
+             information criterion."
+        );
+        let alike = Fitted { months: [month(0); 12], ..fitted };
+        let said = fitted_in_words(&alike, reader(UnitSystem::Metric));
+        assert!(
+            said.contains("hangs on the day before in 12 months; amounts are gamma in 12 months, each"),
+            "{said}"
+        );
     }
 
     #[test]

@@ -21,6 +21,9 @@ const MOST_STEPS: usize = 60;
 const LEAST_PART: f64 = 1e-9;
 
 impl<const N: usize> LagOne<N> {
+    /// Nothing remembered and nothing new.
+    pub const NONE: Self = Self { a: [[0.0; N]; N], b: [[0.0; N]; N] };
+
     /// From the covariances of a vector, of the one before it, and between both (`m1[i][j]` of `z[i]` with `before[j]`).
     ///
     /// Variables without variance stay 0. Where the covariances contradict each other, as estimates from few years may, M1

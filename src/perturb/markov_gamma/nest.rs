@@ -100,9 +100,9 @@ impl Nest {
             parts: part_nests(year, wet_above_mm, record, follows, drawn),
             seasons: Stage {
                 own: [Normal::default(); SEASONAL],
-                own_memory: LagOne { a: [[0.0; SEASONAL]; SEASONAL], b: [[0.0; SEASONAL]; SEASONAL] },
+                own_memory: LagOne::NONE,
                 target: [Normal::default(); SEASONAL],
-                target_memory: LagOne { a: [[0.0; SEASONAL]; SEASONAL], b: [[0.0; SEASONAL]; SEASONAL] },
+                target_memory: LagOne::NONE,
             },
         };
         nest.fit_seasons(record, follows, drawn);

@@ -20,9 +20,9 @@ pub(super) fn part_nests(
     let count = year.parts.len();
     let zero = Stage {
         own: [Normal::default(); 2],
-        own_memory: LagOne { a: [[0.0; 2]; 2], b: [[0.0; 2]; 2] },
+        own_memory: LagOne::NONE,
         target: [Normal::default(); 2],
-        target_memory: LagOne { a: [[0.0; 2]; 2], b: [[0.0; 2]; 2] },
+        target_memory: LagOne::NONE,
     };
     let mut parts: Vec<PartNest> = (0..count)
         .map(|at| {
