@@ -100,3 +100,26 @@ fn half_step_mm(record: &Series, wet_day_mm: f64) -> f64 {
     let less = sorted.iter().take_while(|mm| **mm < MUCH_LESS * step_mm).count();
     if less * MOST_WITH_LESS <= sorted.len() { step_mm / 2.0 } else { 0.0 }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    fn record(amounts_mm: impl Iterator<Item = f64>) -> Series {
+        Series { precipitation_mm: amounts_mm.collect(), ..Series::default() }
+    }
+
+    /// By hand: a gauge of 2.54 mm whose snow days are corrected by 1.1 tells 2.54 mm at least, and half of it is 1.27. One
+    /// stray day of 0.5 mm among 400 changes nothing, ten do. Amounts from 0.3 mm up without an edge have no step: 5 % of
+    /// them lie below 1.3 mm, most of these well below three quarters of it.
+    #[test]
+    fn a_gauge_that_tells_steps_is_known_by_them() {
+        let coarse = |at: usize| 2.54 * (1 + at % 7) as f64 * if at.is_multiple_of(3) { 1.1 } else { 1.0 };
+        let strays = |strays: usize| (0..400).map(move |at| if at < strays { 0.5 } else { coarse(at) });
+        for (few, half_mm) in [(0, 1.27), (1, 1.27), (10, 0.0)] {
+            assert_eq!(half_step_mm(&record(strays(few)), 0.3), half_mm, "{few} stray days");
+        }
+        assert_eq!(half_step_mm(&record((0..400).map(|at| 0.3 + 0.05 * at as f64)), 0.25), 0.0);
+        assert_eq!(half_step_mm(&record([0.0, 0.1].into_iter()), 0.3), 0.0, "no wet day");
+    }
+}
