@@ -1,6 +1,7 @@
 //! Elevation bands: the area-elevation table, read, checked and sorted.
 
 use super::columns::{Column, advice, both};
+use super::ground::Ground;
 use crate::fault::Fault;
 use crate::table::{Format, Row, Table, Tally, joined};
 use crate::units::{AreaUnit, LengthUnit};
@@ -20,6 +21,8 @@ pub struct Band {
     pub area_km2: f64,
     /// Elevation at which the band is run: the stated mean, else the middle, m.
     pub elevation_m: f64,
+    /// Slope, trees, and how unevenly its snow lies.
+    pub ground: Ground,
 }
 
 /// How a table of bands is to be read.
@@ -100,7 +103,13 @@ pub fn read_bands(file: &str, text: &str, columns: &BandColumns) -> Result<Vec<B
             .map(|(at, unit)| tally.keep(table.required_number(&row, at)).map(|value| unit.to_metres(value)));
         let (Some(lower_m), Some(upper_m), Some(area_km2)) = (lower_m, upper_m, area_km2) else { continue };
         let middle_m = (lower_m + upper_m) / 2.0;
-        let band = Band { lower_m, upper_m, area_km2, elevation_m: mean_m.flatten().unwrap_or(middle_m) };
+        let band = Band {
+            lower_m,
+            upper_m,
+            area_km2,
+            elevation_m: mean_m.flatten().unwrap_or(middle_m),
+            ground: Ground::default(),
+        };
         let mut complain =
             |at: usize, expected: &str, mend: &str| tally.push(table.cell_fault(&row, at, expected, mend));
         if lower_m >= upper_m {

@@ -2,6 +2,7 @@
 
 use super::bands::{Band, MOST_BANDS};
 use super::columns::{Column, advice, both};
+use super::ground::Ground;
 use crate::fault::Fault;
 use crate::table::{Format, Row, Table, Tally, joined};
 use crate::units::{AreaUnit, LengthUnit};
@@ -167,6 +168,7 @@ fn band_between(points: &[Point], lower_m: f64, upper_m: f64) -> Option<Band> {
         upper_m,
         area_km2,
         elevation_m: (moment / area_km2).clamp(lower_m, upper_m),
+        ground: Ground::default(),
     })
 }
 

@@ -4,12 +4,14 @@ mod bands;
 mod columns;
 mod curve;
 mod gradients;
+mod ground;
 mod reach;
 
 pub use bands::{Band, BandColumns, read_bands};
 pub use columns::Column;
 pub use curve::{CurveColumns, read_curve};
 pub use gradients::{PrecipitationGradient, TemperatureGradient};
+pub use ground::Ground;
 pub use reach::BeyondStations;
 
 use crate::fault::Unlikely;

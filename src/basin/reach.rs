@@ -49,7 +49,7 @@ impl Basin {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::basin::{Band, PrecipitationGradient, TemperatureGradient};
+    use crate::basin::{Band, Ground, PrecipitationGradient, TemperatureGradient};
 
     /// By hand: bands of 100 and 300 km2; a station in the middle of the upper one has half of it above, 150 of 400 km2.
     /// With 100 mm below and 500 mm above, the volumes are 10 and 150 hm3, so 75 of 160 lie above.
@@ -60,6 +60,7 @@ mod tests {
             upper_m: lower_m + 1000.0,
             area_km2,
             elevation_m: lower_m + 500.0,
+            ground: Ground::default(),
         };
         let basin = Basin {
             latitude_deg: 40.0,

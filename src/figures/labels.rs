@@ -190,7 +190,10 @@ mod tests {
         let written =
             [1240.4, 99.96, 41.38, 9.996, 4.34, 0.3, 0.0].map(|hm3| volume(UnitSystem::Metric, hm3));
         assert_eq!(written, ["1\u{2009}240", "100", "41.4", "10.0", "4.34", "0.30", "0"]);
-        let of = |lower_m, upper_m| Band { lower_m, upper_m, area_km2: 1.0, elevation_m: lower_m };
+        let of = |lower_m, upper_m| {
+            let ground = crate::basin::Ground::default();
+            Band { lower_m, upper_m, area_km2: 1.0, elevation_m: lower_m, ground }
+        };
         assert_eq!(band(UnitSystem::Metric, &of(900.0, 1200.0)), "900–1\u{2009}200 m");
         assert_eq!(band(UnitSystem::Us, &of(-304.8, 0.0)), "−1\u{2009}000–0 ft");
     }

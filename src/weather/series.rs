@@ -28,6 +28,8 @@ pub struct Series {
     pub half_range_c: Vec<f64>,
     /// Precipitation at the station, mm.
     pub precipitation_mm: Vec<f64>,
+    /// Relative humidity at the station, percent; no days where the record has none.
+    pub relative_humidity_pct: Vec<f64>,
     /// Month of each day, 0 for January.
     pub month: Vec<u8>,
     /// Calendar day of the year of each day, 1 to 366.
@@ -45,6 +47,8 @@ pub struct YearView<'a> {
     pub half_range_c: &'a [f64],
     /// Precipitation, mm.
     pub precipitation_mm: &'a [f64],
+    /// Relative humidity, percent; empty where the record has none.
+    pub relative_humidity_pct: &'a [f64],
     /// Month of each day, 0 for January.
     pub month: &'a [u8],
     /// Calendar day of the year, 1 to 366.
@@ -60,6 +64,7 @@ impl Series {
             mean_c: &self.mean_c[days.clone()],
             half_range_c: &self.half_range_c[days.clone()],
             precipitation_mm: &self.precipitation_mm[days.clone()],
+            relative_humidity_pct: self.relative_humidity_pct.get(days.clone()).unwrap_or_default(),
             month: &self.month[days.clone()],
             day_of_year: &self.day_of_year[days],
         }
@@ -71,6 +76,7 @@ impl Series {
         self.mean_c.clear();
         self.half_range_c.clear();
         self.precipitation_mm.clear();
+        self.relative_humidity_pct.clear();
         self.month.clear();
         self.day_of_year.clear();
     }
@@ -82,6 +88,8 @@ impl Series {
         self.mean_c.extend_from_slice(&from.mean_c[days.clone()]);
         self.half_range_c.extend_from_slice(&from.half_range_c[days.clone()]);
         self.precipitation_mm.extend_from_slice(&from.precipitation_mm[days.clone()]);
+        let humidity = from.relative_humidity_pct.get(days.clone());
+        self.relative_humidity_pct.extend_from_slice(humidity.unwrap_or_default());
         self.month.extend_from_slice(&from.month[days.clone()]);
         self.day_of_year.extend_from_slice(&from.day_of_year[days]);
     }

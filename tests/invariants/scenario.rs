@@ -8,7 +8,7 @@ use proptest::collection::vec;
 use proptest::prelude::*;
 use rand::rngs::ChaCha8Rng;
 use rand::{RngExt, SeedableRng};
-use thawline::basin::{Band, Basin, PrecipitationGradient, TemperatureGradient};
+use thawline::basin::{Band, Basin, Ground, PrecipitationGradient, TemperatureGradient};
 use thawline::calendar::{MonthDay, WaterYearStart};
 use thawline::perturb::{MonthlyChange, PrecipitationChange, StatedChange, Warming};
 use thawline::snow::{DegreeRule, Engine, LaneSpec, Lanes, Path, PhaseRule, SnowParams, YearBlock};
@@ -120,6 +120,7 @@ prop_compose! {
             upper_m: elevation_m + 50.0,
             area_km2,
             elevation_m,
+            ground: Ground::default(),
         });
         let precipitation = match pct_by_level {
             None => PrecipitationChange::PctPerC(pct_per_c),

@@ -38,6 +38,7 @@ pub fn snow_and_weather(case: &Case) -> (SnowParams, Series) {
         mean_c: (0..DAYS).map(temperature).collect(),
         half_range_c: vec![0.0; DAYS],
         precipitation_mm: vec![precipitation_mm; DAYS],
+        relative_humidity_pct: Vec::new(),
         month: dates().map(|date| date.month0() as u8).collect(),
         day_of_year: dates().map(|date| date.ordinal() as u16).collect(),
     };

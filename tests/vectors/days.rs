@@ -46,6 +46,7 @@ pub fn one_year(pack_mm: f64, mean_c: &[f64], half_range_c: &[f64], precipitatio
         mean_c: stated(mean_c, COLD_C, COLD_C),
         half_range_c: stated(half_range_c, 0.0, 0.0),
         precipitation_mm: stated(precipitation_mm, pack_mm, 0.0),
+        relative_humidity_pct: Vec::new(),
         month: first.iter_days().take(DAYS).map(|date| date.month0() as u8).collect(),
         day_of_year: first.iter_days().take(DAYS).map(|date| date.ordinal() as u16).collect(),
     }

@@ -3,7 +3,7 @@
 use super::super::{Setting, Svg, record_precipitation, record_years};
 use super::{assert_texts_apart, texts};
 use crate::baseline::BaselineYears;
-use crate::basin::Band;
+use crate::basin::{Band, Ground};
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::ensemble::RecordYear;
 use crate::findings::{Findings, RecordFindings, RecordQuestions};
@@ -75,7 +75,13 @@ impl Made {
             arrival_volume_hm3: None,
         };
         let measures = Measures::new(season.clone(), 1.0);
-        let band = Band { lower_m: 2000.0, upper_m: 3000.0, area_km2: 40.0, elevation_m: 2500.0 };
+        let band = Band {
+            lower_m: 2000.0,
+            upper_m: 3000.0,
+            area_km2: 40.0,
+            elevation_m: 2500.0,
+            ground: Ground::default(),
+        };
         let questions = RecordQuestions {
             years: &years,
             left_out: &left_out,

@@ -1,7 +1,7 @@
 //! Made-up studies to draw.
 
 use super::super::{FIGURES, Figure, Setting, Svg};
-use crate::basin::Band;
+use crate::basin::{Band, Ground};
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::ensemble::{BasinSeasons, COUNTED_DAYS, Seasons, Silent, SweBins, SweDays};
 use crate::findings::{Findings, Questions, Runs, answer};
@@ -125,7 +125,13 @@ impl Study<'_> {
             .map(|band| {
                 let (lower_m, upper_m) = (self.edges_m[band], self.edges_m[band + 1]);
                 let elevation_m = (lower_m + upper_m) / 2.0;
-                Band { lower_m, upper_m, area_km2: 60.0 - 45.0 * height(band), elevation_m }
+                Band {
+                    lower_m,
+                    upper_m,
+                    area_km2: 60.0 - 45.0 * height(band),
+                    elevation_m,
+                    ground: Ground::default(),
+                }
             })
             .collect();
         let questions = Questions {

@@ -2,6 +2,7 @@
 
 use super::*;
 use crate::baseline::BaselineChoice;
+use crate::basin::Ground;
 use ndarray::{Array2, Array3, array};
 
 /// Bands of 30 and 10 km2.
@@ -11,6 +12,7 @@ fn bands() -> [Band; 2] {
         upper_m: lower_m + 500.0,
         area_km2,
         elevation_m: lower_m + 250.0,
+        ground: Ground::default(),
     };
     [band(1500.0, 30.0), band(2000.0, 10.0)]
 }
