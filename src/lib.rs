@@ -17,6 +17,7 @@ pub mod fault;
 pub mod figures;
 pub mod findings;
 pub mod fit;
+mod normal;
 pub mod observed;
 pub mod perturb;
 pub mod report;

@@ -8,5 +8,6 @@ mod golden;
 mod invariants;
 mod naive;
 mod naive_season;
+mod naive_sun;
 mod record;
 mod vectors;

@@ -13,8 +13,11 @@ mod ledger;
 mod melt;
 mod params;
 mod passes;
+mod patches;
 mod phase;
 mod step;
+mod sun;
+mod wet_bulb;
 
 pub use block::{Detail, YearBlock};
 pub use catch::{GaugeMultiplier, correct_catch};
@@ -24,8 +27,16 @@ pub use lanes::{LaneSpec, Lanes, ROW_MULTIPLE};
 pub use ledger::OpenLedger;
 pub use melt::{RAIN_MELT_PER_MM_C, degree_day_factor, potential_melt};
 pub use params::{DegreeRule, PhaseRule, RawSnow, SnowParams};
-pub use phase::{linear_snow_fraction, step_snow_fraction, tanh_snow_fraction};
+pub use patches::class_multipliers;
+pub use phase::{linear_snow_fraction, s_curve_snow_fraction, step_snow_fraction, tanh_snow_fraction};
 pub use step::{Fluxes, LaneConst, LaneDay, Pack, step};
+pub use sun::{
+    day_length_h, declination_rad, extraterrestrial_radiation, highest_radiation, inverse_relative_distance,
+    potential_radiation, relative_radiation, sunset_hour_angle_rad,
+};
+pub use wet_bulb::{
+    relative_humidity_pct, saturation_vapour_pressure_kpa, standard_pressure_kpa, wet_bulb_c,
+};
 
 /// The larger of two numbers, neither of them NaN: one instruction, where `f64::max` also orders NaN.
 #[inline(always)]

@@ -33,3 +33,19 @@ pub fn step_snow_fraction(mean_c: f64, threshold_c: f64) -> f64 {
 pub fn tanh_snow_fraction(mean_c: f64, middle_c: f64, per_c: f64) -> f64 {
     (1.0 - libm::tanh(per_c * (mean_c - middle_c))) / 2.0
 }
+
+/// A curve of third degree through half snow (Kienzle 2008, Hydrol. Process. 22:5067; its polynomial from memory): with
+/// `x = (T - T50)/(1.4*R)` the share of rain is `0.5 + 3.19x - 6.76x|x| + 5x^3`, between 0 and 1.
+///
+/// `half_snow_at_c` is T50 and `per_c` is `1/(1.4*R)`, R the width of the range in which rain and snow mix. At half of R on
+/// either side the curve is at its ends.
+///
+/// ```
+/// use thawline::snow::s_curve_snow_fraction;
+/// assert_eq!(s_curve_snow_fraction(2.0, 2.0, 1.0 / (1.4 * 12.0)), 0.5);
+/// ```
+#[inline(always)]
+pub fn s_curve_snow_fraction(mean_c: f64, half_snow_at_c: f64, per_c: f64) -> f64 {
+    let x = (mean_c - half_snow_at_c) * per_c;
+    smaller(larger(0.5 - x * (3.19 - x.abs() * 6.76 + x * x * 5.0), 0.0), 1.0)
+}

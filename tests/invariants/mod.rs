@@ -10,6 +10,7 @@ mod same_bits;
 mod scenario;
 mod season_sums;
 mod seasons;
+mod sun;
 mod wet_days;
 
 use proptest::test_runner::Config;

@@ -38,6 +38,10 @@ pub enum Standing {
     Computed,
     /// Computed; the publication named beside it was quoted from memory and not looked at.
     ComputedCitationFromMemory,
+    /// The value stands in the source or in a text that quotes it, and was read there.
+    Read,
+    /// The value itself was quoted from memory; it agrees with the formula beside it.
+    FromMemory,
 }
 
 #[derive(Deserialize)]

@@ -3,6 +3,7 @@
 //! The cases stand as data in the `.toml` files beside this one. `run` names the function that feeds a case's input to
 //! the program; every expected value of a case must be asked for, or the case fails.
 
+mod air;
 mod bands;
 mod calendar;
 mod case;
@@ -12,6 +13,7 @@ mod scores;
 mod seattle;
 mod statistics;
 mod still_year;
+mod sun;
 mod trends;
 mod units;
 
@@ -20,13 +22,18 @@ use case::Case;
 /// What a case is run through.
 type Runner = fn(&Case);
 
-const RUNNERS: [(&str, Runner); 23] = [
+const RUNNERS: [(&str, Runner); 28] = [
     ("days", days::days),
     ("precipitation factor", days::precipitation_factor),
     ("temperature shift", days::temperature_shift),
     ("melt over bands", bands::melt_over_bands),
     ("season over bands", bands::season_over_bands),
     ("weather over bands", bands::weather_over_bands),
+    ("sun", sun::sun),
+    ("slopes", sun::slopes),
+    ("standard pressure", air::standard_pressure),
+    ("wet bulb", air::wet_bulb),
+    ("s-curve", air::s_curve),
     ("closed season", closed_season::closed_season),
     ("water-year days", calendar::water_year_days),
     ("water years", calendar::water_years),
@@ -61,6 +68,18 @@ fn run(text: &str) {
 #[test]
 fn one_day_physics() {
     run(include_str!("physics.toml"));
+}
+
+/// Where the sun stands, and what it brings to level ground and to slopes.
+#[test]
+fn the_sun() {
+    run(include_str!("sun.toml"));
+}
+
+/// Wet bulb, pressure, and the curves of rain and snow.
+#[test]
+fn air_and_phase() {
+    run(include_str!("air.toml"));
 }
 
 /// Seasons that can be solved in closed form: one place, and a basin of bands.

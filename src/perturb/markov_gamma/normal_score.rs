@@ -1,6 +1,6 @@
 //! Normal scores: where a value stands among its like, on the scale of a standard normal; and the way back.
 
-use std::f64::consts::{FRAC_1_SQRT_2, PI};
+use crate::normal::{below, score_of};
 
 /// The distribution's shape is kept at scores from minus to plus this: one value in 370 lies beyond.
 const OUTERMOST: f64 = 3.0;
@@ -68,26 +68,6 @@ pub fn quantile(sorted: &[f64], share: f64) -> f64 {
     let before = (place as usize).min(sorted.len()) - 1;
     let after = (before + 1).min(sorted.len() - 1);
     sorted[before] + (sorted[after] - sorted[before]) * (place - (before + 1) as f64)
-}
-
-/// The share of a standard normal below a score.
-pub fn below(score: f64) -> f64 {
-    0.5 * libm::erfc(-score * FRAC_1_SQRT_2)
-}
-
-/// The score below which a share lies: Newton's steps from a rational approximation (Abramowitz & Stegun 1964, 26.2.23,
-/// within 4.5e-4), which three bring to rounding.
-fn score_of(share: f64) -> f64 {
-    let tail = share.min(1.0 - share);
-    let t = libm::sqrt(-2.0 * libm::log(tail));
-    let above = 2.515_517 + t * (0.802_853 + t * 0.010_328);
-    let under = 1.0 + t * (1.432_788 + t * (0.189_269 + t * 0.001_308));
-    let mut score = above / under - t;
-    for _ in 0..3 {
-        let density = libm::exp(-0.5 * score * score) / libm::sqrt(2.0 * PI);
-        score -= (below(score) - tail) / density;
-    }
-    if share < 0.5 { score } else { -score }
 }
 
 #[cfg(test)]

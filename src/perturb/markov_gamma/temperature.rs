@@ -3,8 +3,9 @@
 
 use super::common_year::CommonYear;
 use super::lag_one::{LagOne, Matrix};
-use super::normal_score::{Shape, below, normal_scores, quantile};
+use super::normal_score::{Shape, normal_scores, quantile};
 use super::record_days::{RecordDay, RecordDays};
+use crate::normal::below;
 
 /// A month with fewer wet (or dry) days than this borrows from its neighbours.
 const LEAST_DAYS: usize = 20;

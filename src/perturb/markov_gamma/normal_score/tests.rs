@@ -1,24 +1,4 @@
-use super::{Shape, below, normal_scores, quantile, score_of};
-
-/// `scipy.stats.norm.ppf` of these shares, scipy 1.17.1; 1e-9 of scores of some ones, since from a share of 1e-6 a
-/// rounding of 1e-16 moves the score by 1e-11.
-#[test]
-fn scores_of_shares() {
-    let cases = [
-        (1e-6, -4.753_424_308_822_899),
-        (0.001, -3.090_232_306_167_813),
-        (0.05, -1.644_853_626_951_472_9),
-        (0.3, -0.524_400_512_708_040_9),
-        (0.5, 0.0),
-        (0.7, 0.524_400_512_708_040_7),
-        (0.975, 1.959_963_984_540_054),
-    ];
-    for (share, expected) in cases {
-        let found = score_of(share);
-        assert!((found - expected).abs() < 1e-9, "{found} for {expected}");
-        assert!((below(expected) - share).abs() < 1e-12);
-    }
-}
+use super::{Shape, normal_scores, quantile};
 
 /// `norm.ppf((rankdata(v) - 1/3)/(len(v) + 1/3))`, scipy 1.17.1, with values that share their mean rank.
 #[test]
