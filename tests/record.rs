@@ -3,7 +3,7 @@
 
 use crate::cli::basin::weather;
 use thawline::calendar::{MonthDay, WaterYearStart};
-use thawline::snow::{GaugeMultiplier, PhaseRule, correct_catch};
+use thawline::snow::{DegreeRule, GaugeMultiplier, SnowParams, StationPhase, correct_catch};
 use thawline::table::{DateColumn, Format};
 use thawline::units::{DepthUnit, TemperatureUnit};
 use thawline::weather::{
@@ -141,7 +141,9 @@ fn gauge_catch() {
     record.series.precipitation_mm.truncate(3);
     record.series.precipitation_mm.fill(10.0);
     record.series.mean_c[..3].copy_from_slice(&[1.0, -4.0, 8.0]);
-    correct_catch(&mut record.series, GaugeMultiplier { rain: 1.0, snow: 1.2 }, PhaseRule::LINEAR);
+    let snow = SnowParams::defaults(DegreeRule::Diurnal, false);
+    let phase = StationPhase::of(&snow, 1500.0);
+    correct_catch(&mut record.series, GaugeMultiplier { rain: 1.0, snow: 1.2 }, phase);
     for (found, expected) in record.series.precipitation_mm.iter().zip([11.0, 12.0, 10.0]) {
         assert!((found - expected).abs() < 1e-12, "{found} for {expected}");
     }

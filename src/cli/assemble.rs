@@ -13,7 +13,8 @@ use crate::observed::Observations;
 use crate::perturb::{MonthlyChange, Recipe};
 use crate::report::{Input, Origin, Reader};
 use crate::scenario::{DefaultInForce, Document, Draft, ObservedTyped, Scenario};
-use crate::snow::{LaneSpec, Lanes, OpenLedger, correct_catch};
+use crate::season::Measures;
+use crate::snow::{LaneSpec, Lanes, OpenLedger, StationPhase, correct_catch};
 use crate::units::cubic_hectometres;
 use crate::weather::{Record, Series};
 use std::path::Path;
@@ -76,7 +77,8 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 precipitation: scenario.basin.precipitation,
             };
             let mut weather = record.series.clone();
-            correct_catch(&mut weather, scenario.weather.gauge_multiplier, scenario.snow.rain_snow);
+            let phase = StationPhase::of(&scenario.snow, scenario.weather.station_elevation_m);
+            correct_catch(&mut weather, scenario.weather.gauge_multiplier, phase);
             let survey = scenario.season.survey_dates[0];
             let mut drawn_from = weather.clone();
             let detrended = scenario.weather.detrend_to.and_then(|year| {
@@ -267,10 +269,10 @@ impl Ready {
 
     /// Share of the station's precipitation, corrected for catch, that falls as snow at its own temperature.
     pub fn station_snow_fraction(&self) -> f64 {
-        let phase = self.scenario.snow.rain_snow;
+        let phase = StationPhase::of(&self.scenario.snow, self.scenario.weather.station_elevation_m);
         let (mut snow_mm, mut all_mm) = (0.0, 0.0);
-        for (amount_mm, mean_c) in self.weather.precipitation_mm.iter().zip(&self.weather.mean_c) {
-            snow_mm += amount_mm * phase.snow_fraction(*mean_c);
+        for (day, amount_mm) in self.weather.precipitation_mm.iter().enumerate() {
+            snow_mm += amount_mm * phase.snow_fraction(&self.weather, day);
             all_mm += amount_mm;
         }
         if all_mm > 0.0 { snow_mm / all_mm } else { 0.0 }
@@ -292,6 +294,12 @@ impl Ready {
         typed.levels_c.iter().map(|level_c| typed.warming.at(*level_c)).collect()
     }
 
+    /// What a study measures of every year.
+    pub fn measures(&self) -> Measures {
+        let measures = Measures::new(self.scenario.season.clone(), self.basin.area_km2());
+        if self.scenario.snow.options.sublimation.is_some() { measures.with_sublimation() } else { measures }
+    }
+
     /// Lanes of every band under each change, and a basin mean for each.
     pub fn lanes(&self, changes: &[MonthlyChange]) -> Lanes {
         let shares = self.basin.shares();
@@ -304,6 +312,7 @@ impl Ready {
                         basin: &self.basin,
                         station_m: self.scenario.weather.station_elevation_m,
                         elevation_m: band.elevation_m,
+                        ground: band.ground,
                         change,
                         snow: &self.scenario.snow,
                         share: *share,

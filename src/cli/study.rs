@@ -46,7 +46,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     let target = target(&ready, shared)?;
     may_be_replaced(&target, "study", shared)?;
     let scenario = &ready.scenario;
-    let measures = Measures::new(scenario.season.clone(), ready.basin.area_km2());
+    let measures = ready.measures();
     check_size(&ready, measures.list().len(), shared)?;
     if !shared.quiet {
         output::complain(&crate::scenario::unlikely_lines(&ready.unlikely));

@@ -2,10 +2,10 @@
 
 use super::place::Place;
 use super::weather::Day;
-use crate::basin::{Basin, PrecipitationGradient, TemperatureGradient};
+use crate::basin::{Basin, Ground, PrecipitationGradient, TemperatureGradient};
 use crate::perturb::MonthlyChange;
 use crate::snow::{
-    DegreeRule, Engine, GaugeMultiplier, LaneSpec, Lanes, OpenLedger, SnowParams, correct_catch,
+    DegreeRule, Engine, GaugeMultiplier, LaneSpec, Lanes, OpenLedger, SnowParams, StationPhase, correct_catch,
 };
 use crate::weather::{Series, YearSpan};
 use chrono::Datelike;
@@ -82,11 +82,13 @@ impl SnowSite {
             ..SnowParams::defaults(DegreeRule::Diurnal, basin.is_southern())
         };
         let mut weather = whole_years(place, days);
-        correct_catch(&mut weather, GaugeMultiplier { rain: 1.0, snow: self.snow_catch }, snow.rain_snow);
+        let multiplier = GaugeMultiplier { rain: 1.0, snow: self.snow_catch };
+        correct_catch(&mut weather, multiplier, StationPhase::of(&snow, place.station_m));
         let lanes = Lanes::new(&[vec![LaneSpec {
             basin: &basin,
             station_m: place.station_m,
             elevation_m: self.elevation_m,
+            ground: Ground::default(),
             change: &MonthlyChange::NONE,
             snow: &snow,
             share: 1.0,

@@ -50,7 +50,7 @@ pub fn band_climates(
     winter: WinterMonths,
 ) -> Result<Vec<BandClimate>, OpenLedger> {
     let mut engine = Engine::new(lanes, true);
-    let mut climates = vec![BandClimate::default(); lanes.count()];
+    let mut climates = vec![BandClimate::default(); lanes.places()];
     let mut winter_days = 0;
     engine.years(weather, |span, block| {
         let view = weather.view(span);
@@ -70,7 +70,7 @@ pub fn band_climates(
                 climate.precipitation_mm += rain_mm + snow_mm;
                 climate.snowfall_mm += snow_mm;
                 if is_winter {
-                    let mean_c = detail.mean_c[day * detail.width + column];
+                    let mean_c = detail.mean_c[day * detail.width + lanes.lane(0, band)];
                     climate.winter_mean_c += mean_c;
                     climate.winter_freezing_share += f64::from(u8::from(mean_c < 0.0));
                 }

@@ -2,7 +2,7 @@
 
 use super::comparison::{About, Comparison};
 use super::year::{ComparedYear, DayPair};
-use crate::basin::Basin;
+use crate::basin::{Basin, Ground};
 use crate::calendar::days_between;
 use crate::observed::Observations;
 use crate::perturb::MonthlyChange;
@@ -45,12 +45,14 @@ pub fn compare(sites: &[Site<'_>], model: &Model<'_>) -> Result<Vec<Comparison>,
     if sites.is_empty() {
         return Ok(Vec::new());
     }
+    let snow = model.snow.at_a_point();
     let specs = sites.iter().map(|site| LaneSpec {
         basin: model.basin,
         station_m: model.station_m,
         elevation_m: site.elevation_m,
+        ground: Ground::default(),
         change: &MonthlyChange::NONE,
-        snow: model.snow,
+        snow: &snow,
         share: 1.0 / sites.len() as f64,
     });
     let lanes = Lanes::new(&[specs.collect()]);

@@ -1,12 +1,12 @@
 //! The daily table: states and fluxes of every band and the basin on every day of the record.
 
 use crate::calendar::date_of;
-use crate::snow::{Engine, Lanes, OpenLedger};
-use crate::weather::Series;
+use crate::snow::{Detail, Engine, Lanes, OpenLedger, YearBlock};
+use crate::weather::{Series, YearView};
 use std::io::{self, Write};
 use thiserror::Error;
 
-/// Column names, in order. Fluxes are the day's, states stand at its end.
+/// Columns that every table has, in order. Fluxes are the day's, states stand at its end.
 const HEADER: &str = "date,band,tmean_c,rain_mm,snow_mm,melt_mm,refreeze_mm,outflow_mm,bare_ground_rain_mm,ice_mm,\
                       liquid_mm,swe_mm";
 
@@ -21,52 +21,148 @@ pub enum DailyError {
     Write(#[from] io::Error),
 }
 
+/// What a column that an option adds is taken of.
+#[derive(Clone, Copy)]
+enum Added {
+    /// A row of lanes of the detail.
+    Detail(fn(&Detail) -> &[f64]),
+    /// The share of the ground that the snow covers as the day ends.
+    Covered,
+    /// Snow that went into the air.
+    Sublimation,
+    /// The wet bulb's temperature; none on a dry day, when nothing is told apart.
+    WetBulb,
+    /// What a degree melts on the day.
+    MeltFactor,
+}
+
+/// Columns that the options add, behind the others.
+fn added(lanes: &Lanes) -> Vec<(&'static str, Added)> {
+    let mut columns = Vec::new();
+    if lanes.has_patches() {
+        columns.push(("covered_share", Added::Covered));
+    }
+    if lanes.has_stores() {
+        columns.push(("cold_content_mm", Added::Detail(|detail| &detail.cold_mm)));
+        columns.push(("sublimation_mm", Added::Sublimation));
+    }
+    if lanes.has_wet_bulb() {
+        columns.push(("wet_bulb_c", Added::WetBulb));
+    }
+    if lanes.has_ground() {
+        columns.push(("melt_factor_mm_per_c_day", Added::MeltFactor));
+    }
+    columns
+}
+
 /// Runs the record and writes its days: bands by their number from the lowest, 1, then the basin mean, area-weighted.
 ///
 /// Numbers are written in the shortest form that reads back exactly. `lanes` holds one group: the bands. Years after a
-/// gap start bare.
+/// gap start bare. Options add columns behind those that every table has.
 ///
 /// # Errors
 /// A ledger that does not close, or what `into` says.
 pub fn daily_csv(lanes: &Lanes, weather: &Series, into: &mut impl Write) -> Result<(), DailyError> {
     let mut engine = Engine::new(lanes, true);
-    writeln!(into, "{HEADER}")?;
-    engine.years(weather, |_, block| {
+    let added = added(lanes);
+    write!(into, "{HEADER}")?;
+    for (name, _) in &added {
+        write!(into, ",{name}")?;
+    }
+    writeln!(into)?;
+    engine.years(weather, |span, block| {
         let Some(detail) = &block.detail else { return Ok(()) };
+        let view = weather.view(span);
         for day in 0..block.days {
             let date = date_of(block.first, day + 1);
-            let lane_row =
-                |table: &[f64]| day * detail.width..day * detail.width + table.len().min(detail.width);
-            let (rain, snow) = (block.row(&block.rain_mm, day), block.row(&block.snow_mm, day));
-            let outflow = block.row(&block.outflow_mm, day);
-            let bare_ground_rain = block.row(&block.bare_ground_rain_mm, day);
-            let rows: [&[f64]; 9] = [
-                &detail.mean_c[lane_row(&detail.mean_c)],
-                rain,
-                snow,
-                &detail.melt_mm[lane_row(&detail.melt_mm)],
-                &detail.refreeze_mm[lane_row(&detail.refreeze_mm)],
-                outflow,
-                bare_ground_rain,
-                &detail.ice_mm[lane_row(&detail.ice_mm)],
-                &detail.liquid_mm[lane_row(&detail.liquid_mm)],
-            ];
-            for band in 0..lanes.count() {
+            let now = Day { lanes, block, detail, weather: &view, day };
+            for band in 0..lanes.places() {
                 write!(into, "{date},{}", band + 1)?;
-                write_row(into, rows.map(|row| row[band]))?;
+                now.write(into, &added, Of::Band(band))?;
             }
             write!(into, "{date},basin")?;
-            write_row(into, rows.map(|row| lanes.mix(0, row)))?;
+            now.write(into, &added, Of::Basin)?;
         }
         Ok(())
     })
 }
 
-/// Writes a row's numbers and SWE, ice and liquid together.
-fn write_row(into: &mut impl Write, numbers: [f64; 9]) -> io::Result<()> {
-    for number in numbers {
-        write!(into, ",{number}")?;
+/// What a row is of.
+#[derive(Clone, Copy)]
+enum Of {
+    Band(usize),
+    Basin,
+}
+
+/// A day of the table.
+struct Day<'a> {
+    lanes: &'a Lanes,
+    block: &'a YearBlock,
+    detail: &'a Detail,
+    weather: &'a YearView<'a>,
+    /// From the year's first, 0.
+    day: usize,
+}
+
+impl Day<'_> {
+    fn write(&self, into: &mut impl Write, added: &[(&str, Added)], of: Of) -> io::Result<()> {
+        let (block, detail) = (self.block, self.detail);
+        let [ice, liquid] = [&detail.ice_mm, &detail.liquid_mm].map(|table| self.of_lanes(table, of));
+        for number in [
+            self.of_lanes(&detail.mean_c, of),
+            self.of_columns(&block.rain_mm, of),
+            self.of_columns(&block.snow_mm, of),
+            self.of_lanes(&detail.melt_mm, of),
+            self.of_lanes(&detail.refreeze_mm, of),
+            self.of_columns(&block.outflow_mm, of),
+            self.of_columns(&block.bare_ground_rain_mm, of),
+            ice,
+            liquid,
+            ice + liquid,
+        ] {
+            write!(into, ",{number}")?;
+        }
+        for (_, column) in added {
+            match column {
+                Added::Detail(table) => write!(into, ",{}", self.of_lanes(table(detail), of))?,
+                Added::Covered => write!(into, ",{}", self.covered(of))?,
+                Added::Sublimation => write!(into, ",{}", self.of_columns(&block.sublimation_mm, of))?,
+                Added::WetBulb if self.weather.precipitation_mm[self.day] > 0.0 => {
+                    write!(into, ",{}", self.of_lanes(&detail.wet_bulb_c, of))?;
+                }
+                Added::WetBulb => write!(into, ",")?,
+                Added::MeltFactor => {
+                    let factors = self.lanes.melt_factors(self.weather.day_of_year[self.day]);
+                    write!(into, ",{}", self.of_row(factors, of))?;
+                }
+            }
+        }
+        writeln!(into)
     }
-    let [.., ice, liquid] = numbers;
-    writeln!(into, ",{}", ice + liquid)
+
+    /// A number of the day from a table of lanes.
+    fn of_lanes(&self, table: &[f64], of: Of) -> f64 {
+        let width = self.detail.width;
+        self.of_row(&table[self.day * width..(self.day + 1) * width], of)
+    }
+
+    /// A number of the day from a table of all columns.
+    fn of_columns(&self, table: &[f64], of: Of) -> f64 {
+        self.of_row(self.block.row(table, self.day), of)
+    }
+
+    fn of_row(&self, row: &[f64], of: Of) -> f64 {
+        match of {
+            Of::Band(band) => self.lanes.of_place(0, band, row),
+            Of::Basin => self.lanes.mix(0, row),
+        }
+    }
+
+    /// The covered share as the day ends.
+    fn covered(&self, of: Of) -> f64 {
+        let width = self.block.width;
+        let next = &self.block.swe_mm[(self.day + 1) * width..(self.day + 2) * width];
+        let covers: Vec<f64> = next.iter().map(|swe_mm| crate::snow::cover(*swe_mm)).collect();
+        self.of_row(&covers, of)
+    }
 }

@@ -12,6 +12,7 @@ pub mod numbers;
 mod observed;
 mod publish;
 mod reader;
+mod snow_words;
 mod study;
 mod summary;
 mod tables;

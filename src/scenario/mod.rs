@@ -22,6 +22,7 @@ mod report;
 mod season;
 mod section;
 mod snow;
+mod snow_options;
 mod texts;
 mod warming;
 mod weather;

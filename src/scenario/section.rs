@@ -70,6 +70,12 @@ impl<'d> Section<'d> {
         matches!(value, Some(DeValue::Table(_)))
     }
 
+    /// Whether the key was typed and holds a list.
+    pub fn is_list(&self, key: &str) -> bool {
+        let value = self.table.and_then(|table| table.get(key)).map(toml::Spanned::get_ref);
+        matches!(value, Some(DeValue::Array(_)))
+    }
+
     /// Whether the key was typed.
     pub fn has(&self, key: &str) -> bool {
         self.table.is_some_and(|table| table.contains_key(key))
@@ -85,6 +91,17 @@ impl<'d> Section<'d> {
     pub(super) fn value(&mut self, key: &'static str) -> Option<&'d DeValue<'d>> {
         self.knows(key);
         self.table?.get(key).map(toml::Spanned::get_ref)
+    }
+
+    /// A yes or no, if one was typed.
+    pub fn flag(&mut self, key: &'static str) -> Option<bool> {
+        match self.value(key)? {
+            DeValue::Boolean(flag) => Some(*flag),
+            other => {
+                self.wrong_type(key, other, "true or false");
+                None
+            }
+        }
     }
 
     pub(super) fn wrong_type(&self, key: &str, value: &DeValue<'_>, expected: &str) {

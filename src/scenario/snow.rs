@@ -1,6 +1,7 @@
 //! `[snow]`: parameters of the snow model.
 
 use super::section::Section;
+use super::snow_options;
 use crate::snow::{DegreeRule, PhaseRule, RawSnow, SnowParams};
 
 #[derive(Clone, Copy)]
@@ -8,12 +9,14 @@ enum PhaseWord {
     Linear,
     Step,
     Tanh,
+    SCurve,
 }
 
 pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern: bool) -> Option<SnowParams> {
     let rain_snow = read_phase(section.section("rain_snow"));
     let degree_rule =
         section.choice("degree_rule", &[("diurnal", DegreeRule::Diurnal), ("mean", DegreeRule::Mean)]);
+    let options = snow_options::read(&mut section, is_southern);
     let mut factor = section.section("degree_day_factor_mm_per_c_day");
     let raw = RawSnow {
         rain_snow,
@@ -24,6 +27,7 @@ pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern:
         melt_base_c: section.number("melt_base_c"),
         liquid_holding_fraction: section.number("liquid_holding_fraction"),
         refreeze_fraction: section.number("refreeze_fraction"),
+        options,
     };
     factor.finish();
     let checked = SnowParams::check(&raw, has_daily_range, is_southern);
@@ -43,43 +47,47 @@ pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern:
 }
 
 fn read_phase(mut section: Section<'_>) -> Option<PhaseRule> {
-    let rule = section.choice(
-        "rule",
-        &[("linear", PhaseWord::Linear), ("step", PhaseWord::Step), ("tanh", PhaseWord::Tanh)],
-    );
-    let (PhaseRule::Linear { snow_only_below_c, rain_only_above_c }, PhaseRule::Step { half_snow_at_c }) =
-        (PhaseRule::LINEAR, PhaseRule::STEP)
-    else {
+    let words = [
+        ("linear", PhaseWord::Linear),
+        ("step", PhaseWord::Step),
+        ("tanh", PhaseWord::Tanh),
+        ("s-curve", PhaseWord::SCurve),
+    ];
+    let Some(word) = section.choice("rule", &words) else {
+        let has_numbers = ["snow_only_below_c", "rain_only_above_c", "half_snow_at_c", "mixed_range_c"]
+            .into_iter()
+            .any(|key| section.has(key));
+        if has_numbers && !section.has("rule") {
+            let expected = "\"linear\", \"step\", \"tanh\" or \"s-curve\"";
+            section.required_text("rule", expected, "add rule = \"linear\"");
+        }
         return None;
     };
-    let anything = f64::MIN..=f64::MAX;
-    let mend = "degC of the daily mean";
-    let typed = match rule {
-        Some(PhaseWord::Linear) => Some(PhaseRule::Linear {
-            snow_only_below_c: section.number_or(
-                "snow_only_below_c",
-                snow_only_below_c,
-                anything.clone(),
-                mend,
-            ),
-            rain_only_above_c: section.number_or("rain_only_above_c", rain_only_above_c, anything, mend),
-        }),
-        Some(PhaseWord::Step) => Some(PhaseRule::Step {
-            half_snow_at_c: section.number_or("half_snow_at_c", half_snow_at_c, anything, mend),
-        }),
-        Some(PhaseWord::Tanh) => Some(PhaseRule::Tanh),
-        None => {
-            let has_numbers = ["snow_only_below_c", "rain_only_above_c", "half_snow_at_c"]
-                .into_iter()
-                .any(|key| section.has(key));
-            if has_numbers && !section.has("rule") {
-                section.required_text("rule", "\"linear\", \"step\" or \"tanh\"", "add rule = \"linear\"");
-            }
-            return None;
+    let default = match word {
+        PhaseWord::Linear => PhaseRule::LINEAR,
+        PhaseWord::Step => PhaseRule::STEP,
+        PhaseWord::Tanh => PhaseRule::Tanh,
+        PhaseWord::SCurve => PhaseRule::S_CURVE,
+    };
+    let mut number = |key: &'static str, default: f64| {
+        section.number_or(key, default, f64::MIN..=f64::MAX, "degC of the daily mean")
+    };
+    let typed = match default {
+        PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => PhaseRule::Linear {
+            snow_only_below_c: number("snow_only_below_c", snow_only_below_c),
+            rain_only_above_c: number("rain_only_above_c", rain_only_above_c),
+        },
+        PhaseRule::Step { half_snow_at_c } => {
+            PhaseRule::Step { half_snow_at_c: number("half_snow_at_c", half_snow_at_c) }
         }
+        PhaseRule::Tanh => PhaseRule::Tanh,
+        PhaseRule::SCurve { half_snow_at_c, mixed_range_c } => PhaseRule::SCurve {
+            half_snow_at_c: number("half_snow_at_c", half_snow_at_c),
+            mixed_range_c: number("mixed_range_c", mixed_range_c),
+        },
     };
     section.finish();
-    typed
+    Some(typed)
 }
 
 fn note_defaults(section: &Section<'_>, raw: &RawSnow, snow: &SnowParams) {
@@ -95,6 +103,9 @@ fn note_defaults(section: &Section<'_>, raw: &RawSnow, snow: &SnowParams) {
             format!("{{ rule = \"step\", half_snow_at_c = {half_snow_at_c} }}")
         }
         PhaseRule::Tanh => "{ rule = \"tanh\" }".to_owned(),
+        PhaseRule::SCurve { half_snow_at_c, mixed_range_c } => format!(
+            "{{ rule = \"s-curve\", half_snow_at_c = {half_snow_at_c}, mixed_range_c = {mixed_range_c} }}"
+        ),
     };
     let factor = "degree_day_factor_mm_per_c_day";
     let defaults = [

@@ -9,6 +9,7 @@
 
 mod arrival;
 mod cover;
+mod covered;
 mod kind;
 mod measure;
 mod melt;
@@ -17,8 +18,10 @@ mod period;
 mod precipitation;
 mod rows;
 mod state;
+mod sublimation;
 mod sums;
 
+pub use crate::snow::BARE_MM;
 pub use cover::{SEASONAL_COVER_DAYS, is_seasonal, longest_cover_days};
 pub use kind::{Kind, LEAST_REFERENCE_MM};
 pub use measure::{Measure, NONE, NOT_GONE, NOT_REACHED, Outcome, Place};
@@ -34,8 +37,6 @@ use serde::Serialize;
 pub const LEAST_PEAK_MM: f64 = 10.0;
 /// Dates of net melt are taken of no year that melts less, mm.
 const LEAST_MELT_MM: f64 = 1.0;
-/// A band with less is bare, mm.
-pub const BARE_MM: f64 = 1.0;
 /// A basin with this share of its peak left has melted out.
 const BASIN_MELT_OUT_SHARE: f64 = 0.05;
 /// A day of rain on snow has as much of both, mm: common practice.
@@ -88,8 +89,12 @@ static FAMILIES: &[Family] = &[
     Family { list: outflow::list, take: outflow::take },
     Family { list: arrival::list, take: arrival::take },
     Family { list: precipitation::list, take: precipitation::take },
+    Family { list: covered::list, take: covered::take },
     Family { list: melt::list, take: melt::take },
 ];
+
+/// The family that is taken only of snow that the air can take.
+static OF_SUBLIMATION: Family = Family { list: sublimation::list, take: sublimation::take };
 
 /// What is asked of every year.
 struct Asked {
@@ -121,6 +126,14 @@ impl Measures {
     /// The snow that lies alone, whose first measure is the headline's: for runs that are asked for nothing else.
     pub fn of_snow(settings: SeasonSettings, basin_area_km2: f64) -> Self {
         Self::of_families(&FAMILIES[..1], settings, basin_area_km2)
+    }
+
+    /// The same, and what the air takes of the snow.
+    pub fn with_sublimation(mut self) -> Self {
+        let more = (OF_SUBLIMATION.list)(&self.asked.settings);
+        self.families.push((&OF_SUBLIMATION, more.len()));
+        self.list.extend(more);
+        self
     }
 
     fn of_families(families: &'static [Family], settings: SeasonSettings, basin_area_km2: f64) -> Self {

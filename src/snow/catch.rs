@@ -1,6 +1,8 @@
 //! Gauge catch: what fell, from what the gauge caught (method, section 2).
 
-use super::params::PhaseRule;
+use super::params::SnowParams;
+use super::phase_rule::PhaseRule;
+use super::{standard_pressure_kpa, wet_bulb_c};
 use crate::fault::{Fault, Unlikely, within};
 use crate::weather::Series;
 use serde::Serialize;
@@ -49,14 +51,39 @@ impl GaugeMultiplier {
     }
 }
 
+/// How rain and snow are told apart at a station.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct StationPhase {
+    rule: PhaseRule,
+    /// Pressure at which the wet bulb is taken; none where the air's temperature tells.
+    pressure_kpa: Option<f64>,
+}
+
+impl StationPhase {
+    /// By the rule and the temperature that the parameters name, at a station's elevation.
+    pub fn of(snow: &SnowParams, station_m: f64) -> Self {
+        let pressure_kpa = snow.options.wet_bulb.then(|| standard_pressure_kpa(station_m));
+        Self { rule: snow.rain_snow, pressure_kpa }
+    }
+
+    /// Share of a day's precipitation that falls as snow, days counted from the series' first.
+    pub fn snow_fraction(&self, series: &Series, day: usize) -> f64 {
+        let mean_c = series.mean_c[day];
+        let told_by_c = self
+            .pressure_kpa
+            .map_or(mean_c, |kpa| wet_bulb_c(mean_c, series.relative_humidity_pct[day], kpa));
+        self.rule.snow_fraction(told_by_c)
+    }
+}
+
 /// Corrects a record's precipitation for catch, once and before any perturbation:
-/// `P * (f*k_snow + (1 - f)*k_rain)`, f the snow fraction at the station's own observed mean temperature.
+/// `P * (f*k_snow + (1 - f)*k_rain)`, f the snow fraction at the station's own observed temperature.
 ///
 /// Done on the observed record, warming cannot change how much water falls: a warmer day turns snow into rain and must
 /// not also shrink the day's total through the multiplier.
-pub fn correct_catch(series: &mut Series, multiplier: GaugeMultiplier, phase: PhaseRule) {
-    for (precipitation, mean_c) in series.precipitation_mm.iter_mut().zip(&series.mean_c) {
-        let snow = phase.snow_fraction(*mean_c);
-        *precipitation *= snow * multiplier.snow + (1.0 - snow) * multiplier.rain;
+pub fn correct_catch(series: &mut Series, multiplier: GaugeMultiplier, phase: StationPhase) {
+    for day in 0..series.precipitation_mm.len() {
+        let snow = phase.snow_fraction(series, day);
+        series.precipitation_mm[day] *= snow * multiplier.snow + (1.0 - snow) * multiplier.rain;
     }
 }

@@ -1,22 +1,28 @@
 //! Lanes: every band at every level as one column of numbers. The only place where options meet.
 
-use super::melt::degree_day_factor;
-use super::params::{DegreeRule, PhaseRule, SnowParams, TANH_MIDDLE_C, TANH_PER_C};
-use crate::basin::Basin;
+use super::means::Means;
+use super::melt::{canopy_share, degree_day_factor};
+use super::params::{DegreeRule, SnowParams};
+use super::phase_rule::PhaseRule;
+use super::step::COLD_PER_MM_C;
+use super::{class_multipliers, highest_radiation, potential_radiation, standard_pressure_kpa};
+use crate::basin::{Basin, Ground};
 use crate::perturb::MonthlyChange;
 
 /// Rows are padded to a multiple of this many lanes: one AVX-512 register, or a cache line.
 pub const ROW_MULTIPLE: usize = 8;
 
-/// What one lane is made of.
+/// What one band is made of, as the engine runs it.
 #[derive(Debug, Clone, Copy)]
 pub struct LaneSpec<'a> {
-    /// The basin, for its gradients.
+    /// The basin, for its gradients and its latitude.
     pub basin: &'a Basin,
     /// Elevation of the station, m.
     pub station_m: f64,
     /// Elevation of the lane, m.
     pub elevation_m: f64,
+    /// Slope, trees, and how unevenly its snow lies.
+    pub ground: Ground,
     /// Warming and precipitation change.
     pub change: &'a MonthlyChange,
     /// Parameters.
@@ -29,16 +35,11 @@ pub struct LaneSpec<'a> {
 ///
 /// Lanes stand by their place in the group first and by group second: the lowest band at every level, then the next
 /// band at every level. So bare lanes stand together at the front of a row, where the engine skips them, and the basin
-/// means of all groups are summed side by side.
+/// means of all groups are summed side by side. A band whose snow lies unevenly has a lane for each of its classes.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Lanes {
-    count: usize,
     pub(super) width: usize,
-    pub(super) mixes: usize,
-    pub(super) mix_width: usize,
-    places: usize,
-    /// `[vector of mixes][place]`: share of the lane at a place of a group in the group's basin mean.
-    shares: Vec<[f64; ROW_MULTIPLE]>,
+    pub(super) means: Means,
     pub(super) phase: PhaseRule,
     pub(super) degrees: DegreeRule,
     /// `[month][lane]`: added to the station's daily mean, degC.
@@ -47,116 +48,162 @@ pub struct Lanes {
     pub(super) half_range_offset_c: Vec<f64>,
     /// `[month][lane]`: times the station's precipitation.
     pub(super) precipitation_factor: Vec<f64>,
-    /// `[day of year][lane]`, day 1 first, mm per degC and day.
-    pub(super) degree_day_factor: Vec<f64>,
+    /// Of the band's snowfall: what a class gets.
+    pub(super) snowfall_multiplier: Vec<f64>,
+    /// `[day of year][lane]`, day 1 first: melt of a degree, mm per degC and day.
+    pub(super) melt_factor: Vec<f64>,
+    /// `[day of year][lane]`: refreezing of a degree.
+    pub(super) refreeze_factor: Vec<f64>,
     /// Melt base temperature, degC.
     pub(super) melt_base_c: Vec<f64>,
-    /// `linear`: rain only above; `step`: the threshold; `tanh`: the middle, degC.
+    /// The rule's temperature, degC.
     pub(super) phase_warm_c: Vec<f64>,
-    /// `linear`: 1/(R - S); `tanh`: the slope, per degC.
+    /// The rule's slope, per degC.
     pub(super) phase_per_c: Vec<f64>,
     pub(super) holding_fraction: Vec<f64>,
-    pub(super) refreeze_fraction: Vec<f64>,
+    /// Pressure at which the wet bulb is taken, kPa; no lanes where the air's temperature tells rain from snow.
+    pub(super) pressure_kpa: Vec<f64>,
+    /// What the cold store and the loss to the air need; none without them.
+    pub(super) stores: Option<Stores>,
+    /// Whether every year begins on bare ground.
+    pub(super) starts_bare: bool,
+    has_ground: bool,
+}
+
+/// Columns of the cold store and of the loss to the air.
+#[derive(Debug, Clone, PartialEq)]
+pub(super) struct Stores {
+    /// `[month][lane]`: loss of a day, mm.
+    pub loss_mm: Vec<f64>,
+    /// Loss as a share of the day's snowfall.
+    pub loss_of_snow: Vec<f64>,
+    /// Cold of 1 mm of ice for each degree below 0, mm; 0 without a cold store.
+    pub cold_per_mm_c: Vec<f64>,
+    /// Share of the difference to the air that a day closes.
+    pub cold_share: Vec<f64>,
 }
 
 impl Lanes {
     /// Makes the columns. Each group of specs is one basin at one level and gives one basin mean; its shares should
-    /// add up to 1. All specs take the kind of rain/snow rule and the degree rule of the first; their numbers are their
-    /// own. A group that is shorter than the longest is filled up with lanes on which nothing falls.
+    /// add up to 1. All specs take the kind of rain/snow rule, the degree rule and the kinds of options of the first; their
+    /// numbers are their own. A group that is shorter than the longest is filled up with lanes on which nothing falls.
     pub fn new(groups: &[Vec<LaneSpec<'_>>]) -> Self {
-        let first = groups.iter().flatten().next();
-        let mixes = groups.len();
+        let specs = || groups.iter().flatten();
+        let snow = specs().next().map(|spec| *spec.snow);
+        let options = snow.map(|snow| snow.options).unwrap_or_default();
         let places = groups.iter().map(Vec::len).max().unwrap_or(0);
-        let mix_width = mixes.next_multiple_of(ROW_MULTIPLE);
-        // The lanes of the last place, too, are read as a padded row of mixes; but a lone mean is summed by itself.
-        let last = if mixes == 1 { 1 } else { mix_width };
-        let width = (mixes * places.saturating_sub(1) + last).next_multiple_of(ROW_MULTIPLE);
+        let classes = specs().map(|spec| spec.classes().len()).max().unwrap_or(1);
+        let means = Means::new(groups.len(), places, classes);
+        let width = means.least_width();
+        let row = || vec![0.0; width];
         let mut lanes = Self {
-            count: mixes * places,
             width,
-            mixes,
-            mix_width,
-            places,
-            shares: vec![[0.0; ROW_MULTIPLE]; places * mix_width / ROW_MULTIPLE],
-            phase: first.map_or(PhaseRule::LINEAR, |spec| spec.snow.rain_snow),
-            degrees: first.map_or(DegreeRule::Diurnal, |spec| spec.snow.degree_rule),
+            means,
+            phase: snow.map_or(PhaseRule::LINEAR, |snow| snow.rain_snow),
+            degrees: snow.map_or(DegreeRule::Diurnal, |snow| snow.degree_rule),
             mean_offset_c: vec![0.0; 12 * width],
             half_range_offset_c: vec![0.0; 12 * width],
             precipitation_factor: vec![0.0; 12 * width],
-            degree_day_factor: vec![0.0; 366 * width],
-            melt_base_c: vec![0.0; width],
-            phase_warm_c: vec![0.0; width],
-            phase_per_c: vec![0.0; width],
-            holding_fraction: vec![0.0; width],
-            refreeze_fraction: vec![0.0; width],
+            snowfall_multiplier: row(),
+            melt_factor: vec![0.0; 366 * width],
+            refreeze_factor: vec![0.0; 366 * width],
+            melt_base_c: row(),
+            phase_warm_c: row(),
+            phase_per_c: row(),
+            holding_fraction: row(),
+            pressure_kpa: if options.wet_bulb { vec![standard_pressure_kpa(0.0); width] } else { Vec::new() },
+            stores: (options.cold_content.is_some() || options.sublimation.is_some()).then(|| Stores {
+                loss_mm: vec![0.0; 12 * width],
+                loss_of_snow: row(),
+                cold_per_mm_c: row(),
+                cold_share: row(),
+            }),
+            starts_bare: options.start_bare_each_year,
+            has_ground: options.radiation.is_some() || specs().any(|spec| spec.ground.canopy_fraction > 0.0),
         };
-        for (mix, group) in groups.iter().enumerate() {
-            for (place, spec) in group.iter().enumerate() {
-                lanes.set(lanes.column(mix, place), spec);
-                lanes.shares[mix / ROW_MULTIPLE * places + place][mix % ROW_MULTIPLE] = spec.share;
+        for (group, specs) in groups.iter().enumerate() {
+            for (place, spec) in specs.iter().enumerate() {
+                let (of_classes, degrees) = (spec.classes(), spec.factors());
+                let of_class = 1.0 / of_classes.len() as f64;
+                for (class, multiplier) in of_classes.into_iter().enumerate() {
+                    let lane = lanes.means.lane(group, place, class);
+                    lanes.means.set_shares(group, place, class, spec.share, of_class);
+                    lanes.snowfall_multiplier[lane] = multiplier;
+                    lanes.set(lane, spec);
+                    lanes.set_factors(lane, spec, &degrees);
+                    lanes.set_options(lane, spec);
+                }
             }
         }
         lanes
     }
 
-    /// Column of the lane at a place of a group, both counted from 0 in the order in which they were given.
+    /// Column of a place of a group, both counted from 0 in the order in which they were given: its lane, or the mean of its
+    /// classes.
     pub fn column(&self, group: usize, place: usize) -> usize {
-        place * self.mixes + group
+        let of_classes = if self.means.classes > 1 { self.width } else { 0 };
+        of_classes + place * self.means.groups + group
+    }
+
+    /// The lane of a place of a group, that of its first class: all have the same temperature.
+    pub fn lane(&self, group: usize, place: usize) -> usize {
+        self.means.lane(group, place, 0)
     }
 
     /// Number of lanes, without the padding.
     pub fn count(&self) -> usize {
-        self.count
+        self.means.groups * self.means.places * self.means.classes
+    }
+
+    /// Bands of a group.
+    pub fn places(&self) -> usize {
+        self.means.places
     }
 
     /// Number of basin means.
     pub fn mixes(&self) -> usize {
-        self.mixes
+        self.means.groups
     }
 
     /// Column of the first basin mean in a year block; the others follow in the order of their groups.
     pub fn first_mix_column(&self) -> usize {
-        self.width
+        self.width + self.means.band_width
     }
 
     /// A basin mean of a row of lanes: the shares' sum, taken in the order of the group.
     pub fn mix(&self, mix: usize, row: &[f64]) -> f64 {
-        self.mix_from(0, mix, row)
+        self.means.of_group(mix, row)
     }
 
-    /// The same, the places before `first_place` left out.
-    #[inline(always)]
-    fn mix_from(&self, first_place: usize, mix: usize, row: &[f64]) -> f64 {
-        let shares = &self.shares[mix / ROW_MULTIPLE * self.places..][..self.places];
-        let mut sum = 0.0;
-        for (place, shares) in shares.iter().enumerate().skip(first_place) {
-            sum += shares[mix % ROW_MULTIPLE] * row[self.column(mix, place)];
-        }
-        sum
+    /// A band's value of a row of lanes: its lane's, or the mean of its classes.
+    pub fn of_place(&self, group: usize, place: usize, row: &[f64]) -> f64 {
+        self.means.of_place(group, place, row)
     }
 
-    /// All basin means of a row of lanes, in which the lanes before `from` are 0; the same sums as [`Self::mix`] takes,
-    /// side by side.
-    #[inline(always)]
-    pub(super) fn mix_row(&self, row: &[f64], from: usize, means: &mut [f64]) {
-        let first_place = from.checked_div(self.mixes).unwrap_or(0);
-        if self.mixes == 1 {
-            means.fill(0.0);
-            means[0] = self.mix_from(first_place, 0, row);
-            return;
-        }
-        let (means, _) = means.as_chunks_mut::<ROW_MULTIPLE>();
-        for (vector, means) in means.iter_mut().enumerate() {
-            let shares = &self.shares[vector * self.places..][..self.places];
-            let mut sums = [0.0; ROW_MULTIPLE];
-            for (place, shares) in shares.iter().enumerate().skip(first_place) {
-                let lanes = &row[place * self.mixes + vector * ROW_MULTIPLE..][..ROW_MULTIPLE];
-                for mix in 0..ROW_MULTIPLE {
-                    sums[mix] += shares[mix] * lanes[mix];
-                }
-            }
-            *means = sums;
-        }
+    /// Whether snow lies unevenly within a band.
+    pub fn has_patches(&self) -> bool {
+        self.means.classes > 1
+    }
+
+    /// Whether the wet bulb tells rain from snow.
+    pub fn has_wet_bulb(&self) -> bool {
+        !self.pressure_kpa.is_empty()
+    }
+
+    /// Whether there is a cold store or a loss to the air.
+    pub fn has_stores(&self) -> bool {
+        self.stores.is_some()
+    }
+
+    /// Whether radiation or trees make the melt factor differ from the degree-day factor.
+    pub fn has_ground(&self) -> bool {
+        self.has_ground
+    }
+
+    /// What a degree melts on a calendar day of the year, 1 to 366, a row of lanes, mm per degC and day.
+    pub fn melt_factors(&self, day_of_year: u16) -> &[f64] {
+        let at = (usize::from(day_of_year) - 1) * self.width;
+        &self.melt_factor[at..at + self.width]
     }
 
     fn set(&mut self, lane: usize, spec: &LaneSpec<'_>) {
@@ -171,19 +218,61 @@ impl Lanes {
             self.half_range_offset_c[at] = (tmax_c - tmin_c) / 2.0;
             self.precipitation_factor[at] = spec.change.precipitation_factor[month] * by_elevation;
         }
-        for day in 0..366_u16 {
-            self.degree_day_factor[usize::from(day) * self.width + lane] =
-                degree_day_factor(spec.snow, day + 1);
-        }
         self.melt_base_c[lane] = spec.snow.melt_base_c;
-        (self.phase_warm_c[lane], self.phase_per_c[lane]) = match spec.snow.rain_snow {
-            PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => {
-                (rain_only_above_c, 1.0 / (rain_only_above_c - snow_only_below_c))
-            }
-            PhaseRule::Step { half_snow_at_c } => (half_snow_at_c, 0.0),
-            PhaseRule::Tanh => (TANH_MIDDLE_C, TANH_PER_C),
-        };
+        (self.phase_warm_c[lane], self.phase_per_c[lane]) = spec.snow.rain_snow.numbers();
         self.holding_fraction[lane] = spec.snow.liquid_holding_fraction;
-        self.refreeze_fraction[lane] = spec.snow.refreeze_fraction;
+    }
+
+    fn set_factors(&mut self, lane: usize, spec: &LaneSpec<'_>, factors: &[(f64, f64)]) {
+        for (day, (melting, degree_day)) in factors.iter().enumerate() {
+            self.melt_factor[day * self.width + lane] = *melting;
+            self.refreeze_factor[day * self.width + lane] = spec.snow.refreeze_fraction * degree_day;
+        }
+    }
+
+    fn set_options(&mut self, lane: usize, spec: &LaneSpec<'_>) {
+        if let Some(pressure_kpa) = self.pressure_kpa.get_mut(lane) {
+            *pressure_kpa = standard_pressure_kpa(spec.elevation_m);
+        }
+        let Some(stores) = &mut self.stores else { return };
+        if let Some(cold) = spec.snow.options.cold_content {
+            stores.cold_per_mm_c[lane] = COLD_PER_MM_C;
+            stores.cold_share[lane] = cold.daily_share;
+        }
+        if let Some(loss) = spec.snow.options.sublimation {
+            stores.loss_of_snow[lane] = loss.snowfall_fraction;
+            for (month, mm_per_day) in loss.mm_per_day.iter().enumerate() {
+                stores.loss_mm[month * self.width + lane] = *mm_per_day;
+            }
+        }
+    }
+}
+
+impl LaneSpec<'_> {
+    /// What each class of the band gets of its snowfall; a band of even snow is one class.
+    fn classes(&self) -> Vec<f64> {
+        let Some(patchiness) = self.snow.options.patchiness else { return vec![1.0] };
+        let stated = self.ground.accumulation_variation;
+        let variation = stated.unwrap_or(patchiness.coefficient_of_variation);
+        if variation > 0.0 { class_multipliers(variation, patchiness.classes) } else { vec![1.0] }
+    }
+
+    /// What a degree melts on each calendar day of the year, and the degree-day factor alone, mm per degC and day.
+    fn factors(&self) -> Vec<(f64, f64)> {
+        let canopy = canopy_share(self.ground.canopy_fraction);
+        let (latitude_deg, Ground { slope_deg, aspect_deg, .. }) = (self.basin.latitude_deg, self.ground);
+        let of_full_sun = self.snow.options.radiation.map(|radiation| {
+            let highest = highest_radiation(latitude_deg);
+            move |day| {
+                let potential = potential_radiation(latitude_deg, slope_deg, aspect_deg, day);
+                radiation.factor_mm_per_c_day * (potential / highest)
+            }
+        });
+        let of_day = |day: u16| {
+            let open = degree_day_factor(self.snow, day);
+            let of_sun = of_full_sun.map_or(0.0, |of_sun| of_sun(day));
+            (canopy * (open + of_sun), canopy * open)
+        };
+        (1..=366).map(of_day).collect()
     }
 }

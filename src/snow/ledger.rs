@@ -18,42 +18,59 @@ pub struct OpenLedger {
     pub open_mm: f64,
     /// Rain and snow, mm.
     pub input_mm: f64,
-    /// Outflow, bare-ground rain and change of SWE, mm.
+    /// Outflow, bare-ground rain, sublimation and change of SWE, mm.
     pub accounted_mm: f64,
 }
 
-/// Closes one lane's year: `rain + snow = outflow + bare-ground rain + change of SWE`, to
-/// `1e-9 * max(1 mm, the larger side)`.
-///
-/// # Errors
-/// A ledger that stays open, or one that holds NaN.
-pub(super) fn close(
-    lane: usize,
-    input_mm: f64,
-    outflow_mm: f64,
-    bare_ground_rain_mm: f64,
-    change_mm: f64,
-) -> Result<(), OpenLedger> {
-    let accounted_mm = outflow_mm + bare_ground_rain_mm + change_mm;
-    let open_mm = input_mm - accounted_mm;
-    let allowed_mm = CLOSED_TO * input_mm.abs().max(accounted_mm.abs()).max(1.0);
-    if open_mm.abs() <= allowed_mm {
-        Ok(())
-    } else {
-        Err(OpenLedger { lane, open_mm, input_mm, accounted_mm })
+/// One lane's water of a year, mm.
+#[derive(Debug, Clone, Copy, Default, PartialEq)]
+pub(super) struct Ledger {
+    /// Rain and snow.
+    pub input_mm: f64,
+    pub outflow_mm: f64,
+    pub bare_ground_rain_mm: f64,
+    pub sublimation_mm: f64,
+    /// Change of SWE from the year's first morning to its end.
+    pub change_mm: f64,
+}
+
+impl Ledger {
+    /// Closes the year: `rain + snow = outflow + bare-ground rain + sublimation + change of SWE`, to
+    /// `1e-9 * max(1 mm, the larger side)`.
+    ///
+    /// # Errors
+    /// A ledger that stays open, or one that holds NaN.
+    pub fn close(self, lane: usize) -> Result<(), OpenLedger> {
+        let Self { input_mm, outflow_mm, bare_ground_rain_mm, sublimation_mm, change_mm } = self;
+        let accounted_mm = outflow_mm + bare_ground_rain_mm + sublimation_mm + change_mm;
+        let open_mm = input_mm - accounted_mm;
+        let allowed_mm = CLOSED_TO * input_mm.abs().max(accounted_mm.abs()).max(1.0);
+        if open_mm.abs() <= allowed_mm {
+            Ok(())
+        } else {
+            Err(OpenLedger { lane, open_mm, input_mm, accounted_mm })
+        }
     }
 }
 
 #[cfg(test)]
 mod tests {
-    use super::close;
+    use super::Ledger;
 
     #[test]
     fn an_open_ledger_is_an_error() {
-        assert!(close(0, 800.0, 500.0, 250.0, 50.0).is_ok());
-        let open = close(3, 800.0, 500.0, 250.0, 50.000_01).unwrap_err();
+        let ledger = Ledger {
+            input_mm: 800.0,
+            outflow_mm: 500.0,
+            bare_ground_rain_mm: 200.0,
+            sublimation_mm: 50.0,
+            change_mm: 50.0,
+        };
+        assert!(ledger.close(0).is_ok());
+        let open = Ledger { change_mm: 50.000_01, ..ledger }.close(3).unwrap_err();
         assert_eq!(open.lane, 3);
-        assert!(close(0, 1e-10, 0.0, 0.0, 0.0).is_ok(), "below 1 mm the tolerance is absolute");
-        assert!(close(0, f64::NAN, 0.0, 0.0, 0.0).is_err(), "NaN never closes");
+        let little = Ledger { input_mm: 1e-10, ..Ledger::default() };
+        assert!(little.close(0).is_ok(), "below 1 mm the tolerance is absolute");
+        assert!(Ledger { input_mm: f64::NAN, ..ledger }.close(0).is_err(), "NaN never closes");
     }
 }

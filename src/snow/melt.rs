@@ -16,8 +16,25 @@ pub fn degree_day_factor(snow: &SnowParams, day_of_year: u16) -> f64 {
     (highest + lowest) / 2.0 + (highest - lowest) / 2.0 * libm::cos(angle)
 }
 
-/// What a day could melt if snow were without end, mm: `D*E+ + 0.0125 * rain * max(T, 0)`.
+/// Less melt for each fraction of canopy: 0.16 mm per degC and day for every tenth, on an open factor of 3.51 (Kuusisto 1980,
+/// Nordic Hydrology 11:235; Finland, 12 stations).
+const LESS_UNDER_CANOPY: f64 = 1.6 / 3.51;
+
+/// Share of the open degree-day factor that is left under so much canopy, a fraction: `1 - 1.6/3.51*c`. Forest in the
+/// source's mean, 68 % canopy, has 2.42 of 3.51. It scales melt and refreezing alike; neither interception nor wind is in it.
+///
+/// ```
+/// use thawline::snow::canopy_share;
+/// assert_eq!(canopy_share(0.0), 1.0);
+/// assert!((3.51 * canopy_share(0.68) - 2.42).abs() < 0.005);
+/// ```
+pub fn canopy_share(canopy_fraction: f64) -> f64 {
+    1.0 - LESS_UNDER_CANOPY * canopy_fraction
+}
+
+/// What a day could melt if snow were without end, mm: `M*E+ + 0.0125 * rain * max(T, 0)`, M the melt factor of the day: the
+/// degree-day factor and what radiation adds to it (after Hock 1999), under the band's canopy.
 #[inline(always)]
-pub fn potential_melt(degree_day_factor: f64, melt_degrees_c: f64, rain_mm: f64, mean_c: f64) -> f64 {
-    degree_day_factor * melt_degrees_c + RAIN_MELT_PER_MM_C * rain_mm * super::larger(mean_c, 0.0)
+pub fn potential_melt(melt_factor: f64, melt_degrees_c: f64, rain_mm: f64, mean_c: f64) -> f64 {
+    melt_factor * melt_degrees_c + RAIN_MELT_PER_MM_C * rain_mm * super::larger(mean_c, 0.0)
 }

@@ -1,53 +1,15 @@
 //! The snow model's parameters: what was typed, what may be typed, and the defaults.
 
+use super::options::SnowOptions;
+use super::phase_rule::PhaseRule;
 use crate::calendar::MonthDay;
 use crate::fault::{Fault, Unlikely, within};
 use serde::Serialize;
 
-/// How precipitation is split into rain and snow.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
-#[serde(tag = "rule", rename_all = "lowercase")]
-pub enum PhaseRule {
-    /// Linear between two temperatures.
-    Linear {
-        /// Snow only at or below, degC.
-        snow_only_below_c: f64,
-        /// Rain only at or above, degC.
-        rain_only_above_c: f64,
-    },
-    /// All snow at or below one temperature, all rain above it.
-    Step {
-        /// The threshold, degC.
-        half_snow_at_c: f64,
-    },
-    /// A smooth curve, with the slope and the middle that Dai (2008) gives for land.
-    Tanh,
-}
-
-/// Slope of the `tanh` rule over land, per degC (Dai 2008, abstract).
-pub(super) const TANH_PER_C: f64 = 0.7;
-/// Half snow of the `tanh` rule over land, degC (Dai 2008, abstract).
-pub(super) const TANH_MIDDLE_C: f64 = 1.2;
-
-impl PhaseRule {
-    /// The `linear` rule between -1 and 3 degC.
-    pub const LINEAR: Self = Self::Linear { snow_only_below_c: -1.0, rain_only_above_c: 3.0 };
-    /// The `step` rule at 1 degC, the mean over land of the Northern Hemisphere (Jennings et al. 2018).
-    pub const STEP: Self = Self::Step { half_snow_at_c: 1.0 };
-
-    /// Share of the precipitation that falls as snow at a daily mean temperature.
-    pub fn snow_fraction(self, mean_c: f64) -> f64 {
-        match self {
-            Self::Linear { snow_only_below_c, rain_only_above_c } => super::linear_snow_fraction(
-                mean_c,
-                rain_only_above_c,
-                1.0 / (rain_only_above_c - snow_only_below_c),
-            ),
-            Self::Step { half_snow_at_c } => super::step_snow_fraction(mean_c, half_snow_at_c),
-            Self::Tanh => super::tanh_snow_fraction(mean_c, TANH_MIDDLE_C, TANH_PER_C),
-        }
-    }
-}
+/// Degree-day factor of the whole year where radiation brings the season, mm per degC and day.
+const FACTOR_WITH_RADIATION: f64 = 0.5;
+/// Refreezing where a cold store freezes what it must: common practice.
+const REFREEZE_WITH_COLD_CONTENT: f64 = 0.05;
 
 /// How a day's degrees above and below the melt base temperature are counted.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
@@ -78,6 +40,8 @@ pub struct RawSnow {
     pub liquid_holding_fraction: Option<f64>,
     /// Refreezing, a fraction of the degree-day factor.
     pub refreeze_fraction: Option<f64>,
+    /// Options.
+    pub options: SnowOptions,
 }
 
 /// Checked parameters.
@@ -99,6 +63,9 @@ pub struct SnowParams {
     pub liquid_holding_fraction: f64,
     /// Refreezing, a fraction of the degree-day factor.
     pub refreeze_fraction: f64,
+    /// Options.
+    #[serde(flatten)]
+    pub options: SnowOptions,
 }
 
 impl SnowParams {
@@ -120,7 +87,30 @@ impl SnowParams {
             melt_base_c,
             liquid_holding_fraction: 0.10,
             refreeze_fraction,
+            options: SnowOptions::default(),
         }
+    }
+
+    /// The defaults of a degree rule with options that bring defaults of their own: with radiation the factor does not
+    /// change through the year; the wet bulb has a range of its own; with a cold store refreezing need not stand in for it.
+    fn defaults_with(rule: DegreeRule, is_southern: bool, options: SnowOptions) -> Self {
+        let mut snow = Self { options, ..Self::defaults(rule, is_southern) };
+        if options.radiation.is_some() {
+            snow.degree_day_factor_lowest = FACTOR_WITH_RADIATION;
+            snow.degree_day_factor_highest = FACTOR_WITH_RADIATION;
+        }
+        if options.wet_bulb {
+            snow.rain_snow = PhaseRule::LINEAR_WET_BULB;
+        }
+        if options.cold_content.is_some() {
+            snow.refreeze_fraction = REFREEZE_WITH_COLD_CONTENT;
+        }
+        snow
+    }
+
+    /// The same at a point, as a snow pillow measures it: without the options that describe an area.
+    pub fn at_a_point(self) -> Self {
+        Self { options: self.options.at_a_point(), ..self }
     }
 
     /// Checks what was typed and fills in the defaults of the degree rule.
@@ -146,7 +136,7 @@ impl SnowParams {
                 "name tmin and tmax in [weather], or take the mean rule",
             ));
         }
-        let default = Self::defaults(rule, is_southern);
+        let default = Self::defaults_with(rule, is_southern, raw.options);
         let snow = Self {
             rain_snow: raw.rain_snow.unwrap_or(default.rain_snow),
             degree_rule: rule,
@@ -156,6 +146,7 @@ impl SnowParams {
             melt_base_c: raw.melt_base_c.unwrap_or(default.melt_base_c),
             liquid_holding_fraction: raw.liquid_holding_fraction.unwrap_or(default.liquid_holding_fraction),
             refreeze_fraction: raw.refreeze_fraction.unwrap_or(default.refreeze_fraction),
+            options: raw.options,
         };
         snow.check_ranges(&mut faults);
         if faults.is_empty() { Ok((snow, snow.unlikely())) } else { Err(faults) }
@@ -175,61 +166,36 @@ impl SnowParams {
                 "exchange the two",
             ));
         }
+        if self.options.radiation.is_some() && lowest != highest {
+            faults.push(Fault::key(
+                key("lowest"),
+                lowest,
+                format!("the same as the highest, {highest}, since radiation brings the season"),
+                "make both the same, or take [snow.radiation] out: the season must not count twice",
+            ));
+        }
         within(faults, "snow.melt_base_c", self.melt_base_c, -20.0..=20.0, "degC", "0 to 1 is usual");
         let fraction = "give a fraction, 0.1 for 10 %";
         within(faults, "snow.liquid_holding_fraction", self.liquid_holding_fraction, 0.0..=1.0, "", fraction);
         within(faults, "snow.refreeze_fraction", self.refreeze_fraction, 0.0..=1.0, "", fraction);
-        match self.rain_snow {
-            PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => {
-                let mend = "a few degrees around 1 degC are usual";
-                let key = |name: &str| format!("snow.rain_snow.{name}");
-                within(faults, &key("snow_only_below_c"), snow_only_below_c, -20.0..=20.0, "degC", mend);
-                within(faults, &key("rain_only_above_c"), rain_only_above_c, -20.0..=20.0, "degC", mend);
-                if snow_only_below_c >= rain_only_above_c {
-                    faults.push(Fault::key(
-                        key("rain_only_above_c"),
-                        rain_only_above_c,
-                        format!("a temperature above snow_only_below_c, {snow_only_below_c}"),
-                        "for a single threshold take rule = \"step\"",
-                    ));
-                }
-            }
-            PhaseRule::Step { half_snow_at_c } => {
-                let mend = "-0.4 to 2.4 degC holds 95 % of stations";
-                within(faults, "snow.rain_snow.half_snow_at_c", half_snow_at_c, -20.0..=20.0, "degC", mend);
-            }
-            PhaseRule::Tanh => {}
-        }
+        self.rain_snow.check(faults);
+        self.options.check(faults);
     }
 
     fn unlikely(&self) -> Vec<Unlikely> {
         let mut found = Vec::new();
-        if !(1.6..=6.0).contains(&self.degree_day_factor_highest) {
+        let of_radiation = self.options.radiation.map_or(0.0, |radiation| radiation.factor_mm_per_c_day);
+        let highest = self.degree_day_factor_highest + of_radiation;
+        if !(1.6..=6.0).contains(&highest) {
             found.push(Unlikely::new(
                 "snow.degree_day_factor_mm_per_c_day.highest",
                 format!(
-                    "{} mm per degC and day; the usual range is 1.6 to 6.0 (National Engineering Handbook 630, \
-                     chapter 11)",
-                    self.degree_day_factor_highest
+                    "{highest} mm per degC and day; the usual range is 1.6 to 6.0 (National Engineering Handbook 630, \
+                     chapter 11)"
                 ),
             ));
         }
-        let half_snow_c = match self.rain_snow {
-            PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => {
-                (snow_only_below_c + rain_only_above_c) / 2.0
-            }
-            PhaseRule::Step { half_snow_at_c } => half_snow_at_c,
-            PhaseRule::Tanh => TANH_MIDDLE_C,
-        };
-        if !(-0.4..=2.4).contains(&half_snow_c) {
-            found.push(Unlikely::new(
-                "snow.rain_snow",
-                format!(
-                    "half of the precipitation is snow at {half_snow_c} degC; 95 % of stations lie between -0.4 and \
-                     2.4 degC (Jennings et al. 2018)"
-                ),
-            ));
-        }
+        found.extend(self.rain_snow.unlikely());
         let usual = [
             ("snow.melt_base_c", self.melt_base_c, -1.0..=2.0, "-1 to 2 degC (common practice)"),
             (
@@ -250,6 +216,7 @@ impl SnowParams {
                 found.push(Unlikely::new(key, format!("{value}; usual is {why}")));
             }
         }
+        found.extend(self.options.unlikely());
         found
     }
 }

@@ -3,7 +3,7 @@
 //! Every row is a parameter of its own: so the compiler knows that no two of them overlap, and makes vector code without
 //! asking at run time. The equations are the scalar functions of this room.
 
-use super::{LaneConst, LaneDay, Pack, diurnal_degrees, mean_degrees, step};
+use super::{LaneConst, LaneDay, Pack, diurnal_degrees, mean_degrees, step, wet_bulb_c};
 
 /// Station temperature carried to every lane.
 #[inline(always)]
@@ -40,7 +40,20 @@ pub(super) fn diurnal_degrees_row(
     }
 }
 
-/// Rain and snow of every lane, and its part of the ledger.
+/// Wet-bulb temperature of every lane at its pressure.
+#[inline(always)]
+pub(super) fn wet_bulb_row(
+    wet_bulb: &mut [f64],
+    mean: &[f64],
+    pressure_kpa: &[f64],
+    relative_humidity_pct: f64,
+) {
+    for ((wet_bulb, mean), pressure) in wet_bulb.iter_mut().zip(mean).zip(pressure_kpa) {
+        *wet_bulb = wet_bulb_c(*mean, relative_humidity_pct, *pressure);
+    }
+}
+
+/// Rain and snow of every lane, and its part of the ledger; `mean` is the temperature that tells them apart.
 #[inline(always)]
 #[expect(clippy::too_many_arguments, reason = "a row a parameter, see the top of this file")]
 pub(super) fn split_row(
@@ -51,25 +64,29 @@ pub(super) fn split_row(
     warm: &[f64],
     per_c: &[f64],
     factor: &[f64],
+    multiplier: &[f64],
     precipitation_mm: f64,
     snow_fraction: impl Fn(f64, f64, f64) -> f64,
 ) {
     let n = snow.len();
     let (rain, input, mean) = (&mut rain[..n], &mut input[..n], &mean[..n]);
     let (warm, per_c, factor) = (&warm[..n], &per_c[..n], &factor[..n]);
+    let multiplier = &multiplier[..n];
     for lane in 0..n {
         let fallen = precipitation_mm * factor[lane];
         let frozen = snow_fraction(mean[lane], warm[lane], per_c[lane]) * fallen;
-        snow[lane] = frozen;
-        rain[lane] = fallen - frozen;
-        input[lane] += fallen;
+        let (of_snow, of_rain) = (frozen * multiplier[lane], fallen - frozen);
+        snow[lane] = of_snow;
+        rain[lane] = of_rain;
+        input[lane] += of_snow + of_rain;
     }
 }
 
-/// One day of every lane: the pack, SWE as the next day begins, fluxes and the ledger.
+/// One day of every lane: the pack, SWE as the next day begins, fluxes and the ledger. The rows of the stores are empty
+/// without them.
 #[inline(always)]
 #[expect(clippy::too_many_arguments, reason = "a row a parameter, see the top of this file")]
-pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool>(
+pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_STORES: bool>(
     ice: &mut [f64],
     liquid: &mut [f64],
     melt: &mut [f64],
@@ -80,14 +97,18 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool>(
     net_melt: &mut [f64],
     outflow: &mut [f64],
     bare_ground_rain: &mut [f64],
+    cold: &mut [f64],
+    year_sublimation: &mut [f64],
+    sublimation: &mut [f64],
     snow: &[f64],
     rain: &[f64],
     mean: &[f64],
     above: &[f64],
     below: &[f64],
-    factor: &[f64],
-    holding: &[f64],
+    melting: &[f64],
     refreezing: &[f64],
+    holding: &[f64],
+    stores: StoreRows<'_>,
 ) {
     let n = ice.len();
     let (liquid, melt, refreeze) = (&mut liquid[..n], &mut melt[..n], &mut refreeze[..n]);
@@ -95,19 +116,31 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool>(
     let (swe, net_melt) = (&mut swe[..n], &mut net_melt[..n]);
     let (outflow, bare_ground_rain) = (&mut outflow[..n], &mut bare_ground_rain[..n]);
     let (snow, rain, mean, above, below) = (&snow[..n], &rain[..n], &mean[..n], &above[..n], &below[..n]);
-    let (factor, holding, refreezing) = (&factor[..n], &holding[..n], &refreezing[..n]);
+    let (melting, holding, refreezing) = (&melting[..n], &holding[..n], &refreezing[..n]);
+    let with_stores = if WITH_STORES { n } else { 0 };
+    let (cold, sublimation) = (&mut cold[..with_stores], &mut sublimation[..with_stores]);
+    let year_sublimation = &mut year_sublimation[..with_stores];
+    let StoreRows { loss_mm, loss_of_snow, cold_per_mm_c, cold_share } = stores.cut(with_stores);
     for lane in 0..n {
-        let pack = Pack { ice_mm: ice[lane], liquid_mm: liquid[lane] };
+        let cold_mm = if WITH_STORES { cold[lane] } else { 0.0 };
+        let pack = Pack { ice_mm: ice[lane], liquid_mm: liquid[lane], cold_mm };
+        let snow_mm = if IS_WET { snow[lane] } else { 0.0 };
         let day = LaneDay {
-            snow_mm: if IS_WET { snow[lane] } else { 0.0 },
+            snow_mm,
             rain_mm: if IS_WET { rain[lane] } else { 0.0 },
             mean_c: mean[lane],
             melt_degrees_c: above[lane],
             freeze_degrees_c: below[lane],
-            degree_day_factor: factor[lane],
+            melt_factor: melting[lane],
+            refreeze_factor: refreezing[lane],
+            sublimation_mm: if WITH_STORES { loss_mm[lane] + loss_of_snow[lane] * snow_mm } else { 0.0 },
         };
-        let lane_const = LaneConst { holding_fraction: holding[lane], refreeze_fraction: refreezing[lane] };
-        let (pack, fluxes) = step(pack, day, lane_const);
+        let lane_const = LaneConst {
+            holding_fraction: holding[lane],
+            cold_per_mm_c: if WITH_STORES { cold_per_mm_c[lane] } else { 0.0 },
+            cold_share: if WITH_STORES { cold_share[lane] } else { 0.0 },
+        };
+        let (pack, fluxes) = step::<WITH_STORES>(pack, day, lane_const);
         ice[lane] = pack.ice_mm;
         liquid[lane] = pack.liquid_mm;
         swe[lane] = pack.ice_mm + pack.liquid_mm;
@@ -118,9 +151,37 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool>(
             bare_ground_rain[lane] = fluxes.bare_ground_rain_mm;
             year_bare[lane] += fluxes.bare_ground_rain_mm;
         }
+        if WITH_STORES {
+            cold[lane] = pack.cold_mm;
+            sublimation[lane] = fluxes.sublimation_mm;
+            year_sublimation[lane] += fluxes.sublimation_mm;
+        }
         if WITH_DETAIL {
             melt[lane] = fluxes.melt_mm;
             refreeze[lane] = fluxes.refreeze_mm;
+        }
+    }
+}
+
+/// Rows of what the cold store and the loss to the air need.
+#[derive(Clone, Copy)]
+pub(super) struct StoreRows<'l> {
+    /// Loss of a day, mm.
+    pub loss_mm: &'l [f64],
+    /// Loss as a share of the day's snowfall.
+    pub loss_of_snow: &'l [f64],
+    pub cold_per_mm_c: &'l [f64],
+    pub cold_share: &'l [f64],
+}
+
+impl StoreRows<'_> {
+    #[inline(always)]
+    fn cut(self, lanes: usize) -> Self {
+        Self {
+            loss_mm: &self.loss_mm[..lanes],
+            loss_of_snow: &self.loss_of_snow[..lanes],
+            cold_per_mm_c: &self.cold_per_mm_c[..lanes],
+            cold_share: &self.cold_share[..lanes],
         }
     }
 }

@@ -18,7 +18,7 @@ use rand::rngs::ChaCha8Rng;
 use rand::{RngExt, SeedableRng};
 use std::hint::black_box;
 use std::time::Instant;
-use thawline::basin::{Basin, PrecipitationGradient, TemperatureGradient};
+use thawline::basin::{Basin, Ground, PrecipitationGradient, TemperatureGradient};
 use thawline::perturb::{MonthlyChange, Warming};
 use thawline::snow::{DegreeRule, Engine, LaneSpec, Lanes, PhaseRule, SnowParams};
 use thawline::weather::{Series, YearSpan};
@@ -124,6 +124,7 @@ impl Bench {
                 basin: &self.basin,
                 station_m: STATION_M,
                 elevation_m: *elevation_m,
+                ground: Ground::default(),
                 change,
                 snow: &self.snow,
                 share: 1.0 / self.elevations_m.len() as f64,

@@ -11,7 +11,9 @@ use rand::{RngExt, SeedableRng};
 use thawline::basin::{Band, Basin, Ground, PrecipitationGradient, TemperatureGradient};
 use thawline::calendar::{MonthDay, WaterYearStart};
 use thawline::perturb::{MonthlyChange, PrecipitationChange, StatedChange, Warming};
-use thawline::snow::{DegreeRule, Engine, LaneSpec, Lanes, Path, PhaseRule, SnowParams, YearBlock};
+use thawline::snow::{
+    DegreeRule, Engine, LaneSpec, Lanes, Path, PhaseRule, SnowOptions, SnowParams, YearBlock,
+};
 use thawline::weather::{Series, YearSpan};
 
 /// One random study, small enough to run hundreds of.
@@ -94,6 +96,7 @@ prop_compose! {
             melt_base_c,
             liquid_holding_fraction,
             refreeze_fraction,
+            options: SnowOptions::default(),
         }
     }
 }
@@ -200,6 +203,7 @@ impl Scenario {
                 basin: &self.basin,
                 station_m: self.station_m,
                 elevation_m: band.elevation_m,
+                ground: band.ground,
                 change,
                 snow: &self.snow,
                 share: *share,
@@ -259,6 +263,7 @@ impl Scenario {
                 }
                 PhaseRule::Step { half_snow_at_c } => naive::Phase::Step { threshold_c: half_snow_at_c },
                 PhaseRule::Tanh => naive::Phase::Tanh,
+                PhaseRule::SCurve { .. } => unreachable!("not drawn"),
             },
             degrees: match self.snow.degree_rule {
                 DegreeRule::Mean => naive::Degrees::Mean,

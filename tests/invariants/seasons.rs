@@ -6,7 +6,7 @@ use crate::naive_season::{self as naive, Place, When};
 use proptest::prelude::*;
 use thawline::calendar::{MonthDay, day_of_water_year};
 use thawline::season::{Measures, NONE, NOT_GONE, NOT_REACHED, SeasonSettings};
-use thawline::snow::{Path, YearBlock};
+use thawline::snow::{Lanes, Path, YearBlock};
 
 fn month_day(month: u32, day: u32) -> MonthDay {
     MonthDay::new(month, day).expect("a day of every year")
@@ -26,7 +26,12 @@ fn column_of(block: &YearBlock, table: &[f64], column: usize) -> Vec<f64> {
 }
 
 /// Every measure of a column by its name, from the definitions; the basin has 1 km2.
-fn expected(block: &YearBlock, column: usize, settings: &SeasonSettings) -> Vec<(String, f64)> {
+fn expected(
+    block: &YearBlock,
+    column: usize,
+    settings: &SeasonSettings,
+    covered: &[f64],
+) -> Vec<(String, f64)> {
     let [swe, net_melt, outflow, bare, rain, snow] = [
         &block.swe_mm,
         &block.net_melt_mm,
@@ -45,6 +50,7 @@ fn expected(block: &YearBlock, column: usize, settings: &SeasonSettings) -> Vec<
     let mut all = Vec::new();
     for survey in &settings.survey_dates {
         let (survey, day) = (name(survey), day_of(survey));
+        all.push((format!("covered_{survey}_share"), covered[day - 1]));
         all.push((format!("swe_{survey}_mm"), swe[day - 1]));
         all.push((format!("swe_{survey}_over_peak"), or_none(naive::over_peak(&swe, day))));
         let over_precipitation = naive::over_precipitation(&swe, &rain, &snow, day);
@@ -96,8 +102,22 @@ fn expected(block: &YearBlock, column: usize, settings: &SeasonSettings) -> Vec<
     ] {
         all.push((measure.to_owned(), number(when)));
     }
+    all.push(("snow_covered_days".to_owned(), naive::in_window(covered, 1, block.days)));
     all.push(("outflow_centroid_day".to_owned(), or_none(naive::centroid(&swe, &outflow))));
     all
+}
+
+/// The share of a column's area that begins each day with at least 1 mm: of a band all or nothing, of a basin the share of
+/// its bands' area.
+fn covered(block: &YearBlock, lanes: &Lanes, column: usize, scenario: &Scenario) -> Vec<f64> {
+    let of_band = |column: usize| {
+        column_of(block, &block.swe_mm, column).iter().map(|swe| f64::from(u8::from(*swe >= 1.0))).collect()
+    };
+    let Some(mix) = column.checked_sub(block.mixes_at) else { return of_band(column) };
+    let bands: Vec<Vec<f64>> = (0..lanes.places()).map(|band| of_band(lanes.column(mix, band))).collect();
+    let areas: Vec<f64> = scenario.basin.bands.iter().map(|band| band.area_km2).collect();
+    let on_day = |day: usize| bands.iter().map(|band| band[day]).collect::<Vec<f64>>();
+    (0..block.days).map(|day| crate::naive::basin_mean(&on_day(day), &areas)).collect()
 }
 
 /// Settings with random days beside the usual ones, and a volume to wait for.
@@ -117,8 +137,7 @@ fn settings(scenario: &Scenario, [survey, before]: [u32; 2], arrival_mm: f64) ->
 
 /// Whole numbers, which must be the same to the last bit.
 fn is_whole(name: &str) -> bool {
-    name.ends_with("_days") && name != "swe_area_mm_days"
-        || name.ends_with("_day") && name != "outflow_centroid_day"
+    name == "rain_on_snow_days" || name.ends_with("_day") && name != "outflow_centroid_day"
 }
 
 proptest! {
@@ -140,7 +159,8 @@ proptest! {
             let mut values = vec![f64::NAN; measures.list().len() * block.width];
             measures.take(&mut block, &mut values);
             for column in (0..lanes.count()).chain(block.mixes_at..block.mixes_at + lanes.mixes()) {
-                let expected = expected(&untouched, column, &settings);
+                let covered = covered(&untouched, &lanes, column, &scenario);
+                let expected = expected(&untouched, column, &settings, &covered);
                 prop_assert_eq!(expected.len(), measures.list().len(), "every measure is checked");
                 for (name, expected) in expected {
                     let at = measures.list().iter().position(|measure| measure.name == name);

@@ -3,7 +3,7 @@
 use super::case::Case;
 use super::closed_season::{self, Season};
 use super::days::{flat_basin, one_year, plain_snow};
-use thawline::basin::{Basin, PrecipitationGradient, TemperatureGradient};
+use thawline::basin::{Basin, Ground, PrecipitationGradient, TemperatureGradient};
 use thawline::perturb::{MonthlyChange, Warming};
 use thawline::snow::{Engine, LaneSpec, Lanes, SnowParams};
 
@@ -29,6 +29,7 @@ impl UniformArea {
                 basin: &self.basin,
                 station_m: self.lowest_m,
                 elevation_m: self.lowest_m + width_m * (band as f64 + 0.5),
+                ground: Ground::default(),
                 change,
                 snow,
                 share: 1.0 / bands as f64,
@@ -53,6 +54,7 @@ pub fn weather_over_bands(case: &Case) {
         basin: &basin,
         station_m: 0.0,
         elevation_m: *elevation_m,
+        ground: Ground::default(),
         change: &MonthlyChange::NONE,
         snow: &snow,
         share: 1.0 / elevations_m.len() as f64,

@@ -3,6 +3,7 @@
 use super::case::Case;
 use super::days::{flat_basin, plain_snow};
 use chrono::{Datelike, NaiveDate};
+use thawline::basin::Ground;
 use thawline::calendar::{MonthDay, WaterYearStart, date_of};
 use thawline::perturb::{MonthlyChange, Warming};
 use thawline::season::{Measures, SeasonSettings};
@@ -106,7 +107,15 @@ pub fn closed_season(case: &Case) {
     let (basin, levels) = (flat_basin(), case.input::<Vec<f64>>("levels_c"));
     let changes: Vec<MonthlyChange> = levels.iter().map(|level| Warming::default().at(*level)).collect();
     let groups = changes.iter().map(|change| {
-        vec![LaneSpec { basin: &basin, station_m: 0.0, elevation_m: 0.0, change, snow: &snow, share: 1.0 }]
+        vec![LaneSpec {
+            basin: &basin,
+            station_m: 0.0,
+            elevation_m: 0.0,
+            ground: Ground::default(),
+            change,
+            snow: &snow,
+            share: 1.0,
+        }]
     });
     let season = Season::run(&Lanes::new(&groups.collect::<Vec<_>>()), &series, 0);
     let of = |take: &dyn Fn(usize) -> f64| (0..levels.len()).map(take).collect::<Vec<f64>>();

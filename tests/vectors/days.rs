@@ -2,10 +2,12 @@
 
 use super::case::Case;
 use chrono::{Datelike, NaiveDate};
-use thawline::basin::{Basin, PrecipitationGradient, TemperatureGradient};
+use thawline::basin::{Basin, Ground, PrecipitationGradient, TemperatureGradient};
 use thawline::calendar::MonthDay;
 use thawline::perturb::{MonthlyChange, Warming};
-use thawline::snow::{DegreeRule, Detail, Engine, LaneSpec, Lanes, PhaseRule, SnowParams, YearBlock};
+use thawline::snow::{
+    DegreeRule, Detail, Engine, LaneSpec, Lanes, PhaseRule, SnowOptions, SnowParams, YearBlock,
+};
 use thawline::weather::{Series, YearSpan};
 
 /// A snow model without a season, without refreezing and holding unless a case states them.
@@ -26,6 +28,7 @@ pub fn plain_snow(case: &Case) -> SnowParams {
         melt_base_c: case.input_or_none("melt_base_c").unwrap_or(0.0),
         liquid_holding_fraction: 0.0,
         refreeze_fraction: 0.0,
+        options: SnowOptions::default(),
     }
 }
 
@@ -75,7 +78,15 @@ fn run_one_band(case: &Case, change: &MonthlyChange) -> YearBlock {
         &or_zeros(precipitation_mm),
     );
     let (basin, snow) = (flat_basin(), plain_snow(case));
-    let spec = LaneSpec { basin: &basin, station_m: 0.0, elevation_m: 0.0, change, snow: &snow, share: 1.0 };
+    let spec = LaneSpec {
+        basin: &basin,
+        station_m: 0.0,
+        elevation_m: 0.0,
+        ground: Ground::default(),
+        change,
+        snow: &snow,
+        share: 1.0,
+    };
     let lanes = Lanes::new(&[vec![spec]]);
     let mut engine = Engine::new(&lanes, true);
     engine.year(series.view(&series.years[0])).expect("a closed ledger").clone()

@@ -70,6 +70,7 @@ pub fn still_year(swe_mm: Vec<f64>) -> YearBlock {
         first: NaiveDate::from_ymd_opt(2006, 10, 1).expect("a date"),
         days,
         width: 1,
+        means_at: 1,
         mixes_at: 0,
         swe_mm,
         net_melt_mm: nothing(),
@@ -77,6 +78,8 @@ pub fn still_year(swe_mm: Vec<f64>) -> YearBlock {
         bare_ground_rain_mm: nothing(),
         rain_mm: nothing(),
         snow_mm: nothing(),
+        sublimation_mm: Vec::new(),
+        covered: Vec::new(),
         detail: None,
     }
 }

@@ -47,7 +47,7 @@ impl Answered {
         let scenario = scenario.replace("[realizations]\n", &format!("[realizations]\n{realizations}"));
         std::fs::write(&path, scenario).unwrap();
         let ready = assemble(&path, &shared).unwrap();
-        let measures = Measures::new(ready.scenario.season.clone(), ready.basin.area_km2());
+        let measures = ready.measures();
         let findings = runs::find(&ready, &measures, &Progress::new(&shared)).unwrap();
         Self { folder, shared, ready, measures, findings }
     }

@@ -2,9 +2,10 @@
 
 use super::super::numbers::fixed;
 use super::super::reader::Reader;
+use super::super::snow_words::{options, rain_or_snow};
 use super::super::study::Study;
 use crate::perturb::{GeneratorChoice, PrecipitationChange};
-use crate::snow::{DegreeRule, PhaseRule};
+use crate::snow::DegreeRule;
 use crate::units::UnitSystem;
 use maud::{Markup, html};
 
@@ -17,17 +18,13 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
     html! {
         h2 { "What was assumed" }
         dl {
-            dt { "Rain or snow" } dd { @match snow.rain_snow {
-                PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => {
-                    "by the band's daily mean temperature: snow only below " (reader.temperature(snow_only_below_c)) ", rain only above " (reader.temperature(rain_only_above_c)) ", linear between" }
-                PhaseRule::Tanh => { "by the band's daily mean temperature, a smooth curve with half snow at " (reader.temperature(1.2)) " (after Dai 2008)" }
-                PhaseRule::Step { half_snow_at_c } => { "snow up to a daily mean of " (reader.temperature(half_snow_at_c)) ", rain above" }
-            } }
+            dt { "Rain or snow" } dd { (rain_or_snow(reader, snow)) }
             dt { "Melt" } dd { (reader.degree_day_factors(snow.degree_day_factor_lowest, snow.degree_day_factor_highest)) " through the year, highest on "
                 (snow.highest_on.words()) ", for degrees above " (reader.temperature(snow.melt_base_c)) " "
                 @match snow.degree_rule { DegreeRule::Mean => "of the daily mean" , DegreeRule::Diurnal => "of a sine between the day's minimum and maximum" } }
             dt { "Pack" } dd { "holds liquid water up to " (fixed(100.0 * snow.liquid_holding_fraction, 0)) " % of its ice; refreezes at "
                 (fixed(100.0 * snow.refreeze_fraction, 0)) " % of the melt rate" }
+            @for (name, what) in options(reader, snow) { dt { (name) } dd { (what) } }
             dt { "Gauge" } dd { "what was caught times " (study.gauge_multiplier.snow) " for snow and " (study.gauge_multiplier.rain)
                 " for rain, once, at the observed temperature" }
             dt { "Elevation" } dd { "station at " (reader.elevation(study.station_elevation_m)) "; basin-mean precipitation is "

@@ -1,0 +1,90 @@
+//! The snow model's rules and options in words.
+
+use super::numbers::fixed;
+use super::reader::Reader;
+use crate::snow::{PhaseRule, SnowParams};
+
+/// How rain is told from snow.
+pub(super) fn rain_or_snow(reader: Reader, snow: &SnowParams) -> String {
+    let by = if snow.options.wet_bulb {
+        "by the band's wet-bulb temperature at its pressure, the station's relative humidity holding everywhere and at \
+         every level"
+    } else {
+        "by the band's daily mean temperature"
+    };
+    let degrees = |c: f64| reader.temperature(c);
+    match snow.rain_snow {
+        PhaseRule::Linear { snow_only_below_c, rain_only_above_c } => format!(
+            "{by}: snow only below {}, rain only above {}, linear between",
+            degrees(snow_only_below_c),
+            degrees(rain_only_above_c)
+        ),
+        PhaseRule::Step { half_snow_at_c } => {
+            format!("{by}: snow up to {}, rain above", degrees(half_snow_at_c))
+        }
+        PhaseRule::Tanh => {
+            format!(
+                "{by}, a smooth curve with half snow at {} (after Dai 2008)",
+                degrees(snow.rain_snow.half_snow_c())
+            )
+        }
+        PhaseRule::SCurve { half_snow_at_c, mixed_range_c } => format!(
+            "{by}, a curve with half snow at {} and both over {} (after Kienzle 2008)",
+            degrees(half_snow_at_c),
+            reader.difference(mixed_range_c)
+        ),
+    }
+}
+
+/// The options that are on: what each is called, and what it does.
+pub(super) fn options(reader: Reader, snow: &SnowParams) -> Vec<(&'static str, String)> {
+    let options = &snow.options;
+    let mut words = Vec::new();
+    if let Some(radiation) = options.radiation {
+        let full = snow.degree_day_factor_highest + radiation.factor_mm_per_c_day;
+        words.push((
+            "Radiation",
+            format!(
+                "melt goes with the day's potential clear-sky radiation on each band's slope (after Hock 1999): {} in the dark \
+                 and under the year's highest sun on level ground; ground around throws no shadow",
+                reader.degree_day_factors(snow.degree_day_factor_lowest, full)
+            ),
+        ));
+    }
+    if let Some(patchiness) = options.patchiness {
+        words.push((
+            "Patchy snow",
+            format!(
+                "snowfall within a band is lognormal with a coefficient of variation of {} where the band states none of its \
+                 own, in {} classes of equal area",
+                patchiness.coefficient_of_variation, patchiness.classes
+            ),
+        ));
+    }
+    if let Some(cold) = options.cold_content {
+        words.push((
+            "Cold content",
+            format!(
+                "a cold pack freezes what melts in it until it is at {}; its temperature closes {} % of its difference to the \
+                 air each day",
+                reader.temperature(0.0),
+                fixed(100.0 * cold.daily_share, 0)
+            ),
+        ));
+    }
+    if let Some(loss) = options.sublimation {
+        let most_mm = loss.mm_per_day.iter().copied().fold(0.0, f64::max);
+        let by_day = if most_mm > 0.0 {
+            format!("up to {} a day by month", reader.amount(most_mm))
+        } else {
+            "nothing by the day".to_owned()
+        };
+        let share = fixed(100.0 * loss.snowfall_fraction, 0);
+        words.push(("Sublimation", format!("the air takes {by_day}, and {share} % of each day's snowfall")));
+    }
+    if options.start_bare_each_year {
+        let words_of_it = "every water year begins without snow, whatever the year before left".to_owned();
+        words.push(("Each year bare", words_of_it));
+    }
+    words
+}

@@ -1,0 +1,34 @@
+//! How much of the ground the snow covers: covered days, and the covered share on the survey dates.
+
+use super::{Asked, Kind, Measure, Peaks, SeasonSettings, name_of};
+use crate::calendar::day_of_water_year;
+use crate::snow::YearBlock;
+
+pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
+    let on_dates = settings.survey_dates.iter().map(|day| {
+        let title = format!("area under snow on {}", day.words());
+        Measure::new(Kind::Share, format!("covered_{}_share", name_of(*day)), title)
+    });
+    [Measure::new(Kind::DayCount, "snow_covered_days", "days under snow")]
+        .into_iter()
+        .chain(on_dates)
+        .collect()
+}
+
+/// Takes the family's measures: a place is covered where a day begins with at least 1 mm. Of an area it is the share that is
+/// covered, and its covered days are those shares' sum over the year: the mean over the area of every place's days.
+pub(super) fn take(block: &mut YearBlock, _: &Peaks, asked: &Asked, into: &mut [f64]) {
+    let (days, on_dates) = into.split_at_mut(block.width);
+    days.fill(0.0);
+    for day in 0..block.days {
+        for (column, covered_days) in days.iter_mut().enumerate() {
+            *covered_days += block.covered_share(day, column);
+        }
+    }
+    for (shares, survey) in on_dates.chunks_exact_mut(block.width).zip(&asked.settings.survey_dates) {
+        let day = day_of_water_year(block.first, *survey) - 1;
+        for (column, share) in shares.iter_mut().enumerate() {
+            *share = block.covered_share(day, column);
+        }
+    }
+}
