@@ -8,6 +8,5 @@ mod golden;
 mod invariants;
 mod naive;
 mod naive_season;
-mod naive_sun;
 mod record;
 mod vectors;

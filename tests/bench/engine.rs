@@ -5,7 +5,7 @@
 //! also makes the basin means and closes its ledgers. `cargo bench` prints lane-days per second and, at the end, their ratio,
 //! and what part of a run's time it takes to generate its weather.
 
-#[path = "../naive.rs"]
+#[path = "../naive/mod.rs"]
 #[allow(dead_code, reason = "the tests use the rest of it")]
 mod naive;
 
@@ -182,6 +182,7 @@ impl Bench {
             melt_base_c: self.snow.melt_base_c,
             refreeze_fraction: self.snow.refreeze_fraction,
             holding_fraction: self.snow.liquid_holding_fraction,
+            options: naive::Options::default(),
         };
         let at_level = |level_c: &f64| {
             let level_c = *level_c;
@@ -198,6 +199,7 @@ impl Bench {
             precipitation_mm: series.precipitation_mm[day],
             month: usize::from(series.month[day]) + 1,
             day_of_year: f64::from(series.day_of_year[day]),
+            relative_humidity_pct: 100.0,
         };
         (0..series.mean_c.len()).map(day).collect()
     }
@@ -210,13 +212,14 @@ fn run_naive(bands: &[naive::Band], days: &[naive::Day]) -> f64 {
     let [mut swe, mut net_melt, mut outflow, mut bare, mut rain, mut snow] = [[0.0; DAYS]; 6];
     let mut seen = 0.0;
     for band in bands {
-        let (mut ice_mm, mut liquid_mm) = (0.0, 0.0);
+        let mut pack = naive::Pack::default();
         let factors: Vec<f64> =
             (1..=366_u16).map(|day| naive::degree_day_factor(band, f64::from(day))).collect();
         for (number, weather) in days.iter().enumerate() {
             let factor = factors[weather.day_of_year as usize - 1];
-            let result = naive::day(band, factor, ice_mm, liquid_mm, *weather);
-            (ice_mm, liquid_mm) = (result.ice_mm, result.liquid_mm);
+            let terms = naive::Terms { factor, radiation: 0.0, snowfall: 1.0 };
+            let result = naive::day(band, terms, pack, *weather);
+            pack = naive::Pack { ice_mm: result.ice_mm, liquid_mm: result.liquid_mm, cold_mm: 0.0 };
             let at = number % DAYS;
             swe[at] = result.swe_mm;
             net_melt[at] = result.melt_mm - result.refreeze_mm;
@@ -226,7 +229,7 @@ fn run_naive(bands: &[naive::Band], days: &[naive::Day]) -> f64 {
             snow[at] = result.snow_mm;
         }
         let tables = black_box([&swe, &net_melt, &outflow, &bare, &rain, &snow]);
-        seen += tables[0][0] + ice_mm + liquid_mm;
+        seen += tables[0][0] + pack.ice_mm + pack.liquid_mm;
     }
     seen
 }

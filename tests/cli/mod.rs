@@ -6,6 +6,7 @@ mod corpus;
 mod data_faults;
 mod drawn_weather;
 mod generator_sheet;
+mod gradients;
 mod identities;
 mod intensity;
 mod interrupt;

@@ -5,6 +5,7 @@ mod engine;
 mod ensemble;
 mod findings;
 mod mass;
+mod options;
 mod realizations;
 mod same_bits;
 mod scenario;

@@ -275,6 +275,7 @@ impl Scenario {
             melt_base_c: self.snow.melt_base_c,
             refreeze_fraction: self.snow.refreeze_fraction,
             holding_fraction: self.snow.liquid_holding_fraction,
+            options: naive::Options::default(),
         }
     }
 }
@@ -291,6 +292,7 @@ pub fn naive_days(series: &Series) -> (Vec<naive::Day>, Vec<bool>) {
         precipitation_mm: series.precipitation_mm[day],
         month: usize::from(series.month[day]) + 1,
         day_of_year: f64::from(series.day_of_year[day]),
+        relative_humidity_pct: 100.0,
     });
     (days.collect(), starts_bare)
 }

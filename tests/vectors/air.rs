@@ -1,7 +1,7 @@
 //! Humid air: wet bulb and pressure; and the share that falls as rain.
 
 use super::case::Case;
-use thawline::snow::{s_curve_snow_fraction, standard_pressure_kpa, wet_bulb_c};
+use thawline::snow::{PhaseRule, s_curve_snow_fraction, standard_pressure_kpa, wet_bulb_c};
 
 /// The standard atmosphere's pressure by elevation.
 pub fn standard_pressure(case: &Case) {
@@ -27,4 +27,11 @@ pub fn s_curve(case: &Case) {
     let rain =
         |mean_c: &f64| 1.0 - s_curve_snow_fraction(*mean_c, half_snow_at_c, 1.0 / (1.4 * mixed_range_c));
     case.check("rain_share", &case.input::<Vec<f64>>("mean_c").iter().map(rain).collect::<Vec<f64>>());
+}
+
+/// The share of snow by the smooth curve for land.
+pub fn land_curve(case: &Case) {
+    let mean_c: Vec<f64> = case.input("mean_c");
+    let snow: Vec<f64> = mean_c.iter().map(|mean| PhaseRule::Tanh.snow_fraction(*mean)).collect();
+    case.check("snow_share", &snow);
 }

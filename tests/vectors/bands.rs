@@ -41,7 +41,8 @@ impl UniformArea {
     }
 }
 
-/// Temperature and precipitation of one day at several elevations, carried there from a station at 0 m.
+/// Temperature, precipitation and snowfall of one day at several elevations, carried there from a station at 0 m, at a
+/// warming level where one is stated.
 pub fn weather_over_bands(case: &Case) {
     let elevations_m: Vec<f64> = case.input("elevations_m");
     let mut basin = flat_basin();
@@ -49,13 +50,14 @@ pub fn weather_over_bands(case: &Case) {
     let gradient: Option<f64> = case.input_or_none("gradient_pct_per_100m");
     basin.precipitation = PrecipitationGradient::new(gradient.unwrap_or(0.0), None);
     let precipitation_mm: f64 = case.input_or_none("precipitation_mm").unwrap_or(0.0);
+    let change = Warming::default().at(case.input_or_none("level_c").unwrap_or(0.0));
     let snow = plain_snow(case);
     let spec = |elevation_m: &f64| LaneSpec {
         basin: &basin,
         station_m: 0.0,
         elevation_m: *elevation_m,
         ground: Ground::default(),
-        change: &MonthlyChange::NONE,
+        change: &change,
         snow: &snow,
         share: 1.0 / elevations_m.len() as f64,
     };
@@ -68,6 +70,8 @@ pub fn weather_over_bands(case: &Case) {
     let means = bands.clone().map(|band| detail.mean_c[detail.width + lanes.column(0, band)]);
     case.check("mean_c", &means.collect::<Vec<_>>());
     let [rain, snow] = [block.row(&block.rain_mm, 1), block.row(&block.snow_mm, 1)];
+    let snowfall = bands.clone().map(|band| snow[lanes.column(0, band)]);
+    case.check("snow_mm", &snowfall.collect::<Vec<_>>());
     let fallen = bands.map(|band| rain[lanes.column(0, band)] + snow[lanes.column(0, band)]);
     case.check("precipitation_mm", &fallen.collect::<Vec<_>>());
 }

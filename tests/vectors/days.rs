@@ -6,7 +6,7 @@ use thawline::basin::{Basin, Ground, PrecipitationGradient, TemperatureGradient}
 use thawline::calendar::MonthDay;
 use thawline::perturb::{MonthlyChange, Warming};
 use thawline::snow::{
-    DegreeRule, Detail, Engine, LaneSpec, Lanes, PhaseRule, SnowOptions, SnowParams, YearBlock,
+    DegreeRule, Detail, Engine, LaneSpec, Lanes, PhaseRule, SnowOptions, SnowParams, YearBlock, mean_degrees,
 };
 use thawline::weather::{Series, YearSpan};
 
@@ -26,8 +26,8 @@ pub fn plain_snow(case: &Case) -> SnowParams {
         degree_day_factor_highest: factor,
         highest_on: MonthDay::new(6, 21).expect("a day"),
         melt_base_c: case.input_or_none("melt_base_c").unwrap_or(0.0),
-        liquid_holding_fraction: 0.0,
-        refreeze_fraction: 0.0,
+        liquid_holding_fraction: case.input_or_none("liquid_holding_fraction").unwrap_or(0.0),
+        refreeze_fraction: case.input_or_none("refreeze_fraction").unwrap_or(0.0),
         options: SnowOptions::default(),
     }
 }
@@ -107,7 +107,13 @@ pub fn days(case: &Case) {
     let snow_mm = stated_days(case, &block, |block, _, day| block.snow_mm[day * block.width]);
     let rain_mm = stated_days(case, &block, |block, _, day| block.rain_mm[day * block.width]);
     let ice_mm = stated_days(case, &block, |_, detail, day| detail.ice_mm[day * detail.width]);
-    case.check("melt_mm", &stated_days(case, &block, |_, detail, day| detail.melt_mm[day * detail.width]));
+    let of_detail = |column: fn(&Detail) -> &Vec<f64>| {
+        let detail = block.detail.as_ref().expect("detail was asked for");
+        (1..=ice_mm.len()).map(|day| column(detail)[day * detail.width]).collect::<Vec<f64>>()
+    };
+    case.check("melt_mm", &of_detail(|detail| &detail.melt_mm));
+    case.check("refreeze_mm", &of_detail(|detail| &detail.refreeze_mm));
+    case.check("liquid_mm", &of_detail(|detail| &detail.liquid_mm));
     case.check("snow_mm", &snow_mm);
     case.check("rain_mm", &rain_mm);
     case.check("pack_at_end_mm", &ice_mm[ice_mm.len() - 1..]);
@@ -137,6 +143,24 @@ pub fn temperature_shift(case: &Case) {
     case.check("deviation_c", &[deviation]);
     case.check("frost_days", &[mean_c.iter().filter(|mean| **mean <= 0.0).count() as f64]);
     case.check("degree_days", &[melt_mm.iter().sum()]);
+}
+
+/// Positive degrees of the daily mean, averaged over temperatures that are normal: the middle of 20,000 equal steps within
+/// eight standard deviations, each by its density.
+pub fn normal_days(case: &Case) {
+    const STEPS: i32 = 20_000;
+    let (means, deviations): (Vec<f64>, Vec<f64>) = (case.input("mean_c"), case.input("deviation_c"));
+    let average = |(mean_c, deviation_c): (&f64, &f64)| {
+        let (mut degrees, mut weights) = (0.0, 0.0);
+        for step in 0..STEPS {
+            let score = 16.0 * ((f64::from(step) + 0.5) / f64::from(STEPS) - 0.5);
+            let weight = libm::exp(-score * score / 2.0);
+            degrees += weight * mean_degrees(mean_c + score * deviation_c, 0.0).0;
+            weights += weight;
+        }
+        degrees / weights
+    };
+    case.check("degrees_above_c", &means.iter().zip(&deviations).map(average).collect::<Vec<_>>());
 }
 
 /// Mean and standard deviation over n.

@@ -9,6 +9,7 @@ mod calendar;
 mod case;
 mod closed_season;
 mod days;
+mod ranges;
 mod scores;
 mod seattle;
 mod statistics;
@@ -22,7 +23,7 @@ use case::Case;
 /// What a case is run through.
 type Runner = fn(&Case);
 
-const RUNNERS: [(&str, Runner); 28] = [
+const RUNNERS: [(&str, Runner); 33] = [
     ("days", days::days),
     ("precipitation factor", days::precipitation_factor),
     ("temperature shift", days::temperature_shift),
@@ -34,6 +35,10 @@ const RUNNERS: [(&str, Runner); 28] = [
     ("standard pressure", air::standard_pressure),
     ("wet bulb", air::wet_bulb),
     ("s-curve", air::s_curve),
+    ("land curve", air::land_curve),
+    ("normal days", days::normal_days),
+    ("defaults", ranges::defaults_in_range),
+    ("second looks", ranges::second_looks),
     ("closed season", closed_season::closed_season),
     ("water-year days", calendar::water_year_days),
     ("water years", calendar::water_years),
@@ -48,6 +53,7 @@ const RUNNERS: [(&str, Runner); 28] = [
     ("proportion", trends::proportion),
     ("temperature differences", units::temperature_differences),
     ("areas", units::areas),
+    ("degree-day factors", units::degree_day_factors),
     ("volumes", units::volumes),
     ("water over an area", units::water_over_an_area),
     ("scores", scores::scores),
@@ -80,6 +86,12 @@ fn the_sun() {
 #[test]
 fn air_and_phase() {
     run(include_str!("air.toml"));
+}
+
+/// Published ranges of parameters: the defaults, and what is worth a second look.
+#[test]
+fn published_ranges() {
+    run(include_str!("ranges.toml"));
 }
 
 /// Seasons that can be solved in closed form: one place, and a basin of bands.

@@ -1,7 +1,9 @@
 //! Units at the door, and volumes of water.
 
 use super::case::Case;
-use thawline::units::{AreaUnit, DepthUnit, LengthUnit, TemperatureUnit, acre_feet, cubic_hectometres};
+use thawline::units::{
+    AreaUnit, DepthUnit, LengthUnit, TemperatureUnit, UnitSystem, acre_feet, cubic_hectometres,
+};
 
 /// The unit that a case names, as a scenario would.
 fn named<U: Copy, const N: usize>(names: [(&'static str, U); N], wanted: &str) -> U {
@@ -43,4 +45,11 @@ pub fn water_over_an_area(case: &Case) {
     let volume_hm3 = cubic_hectometres(depth_mm, area_km2);
     case.check("volume_hm3", &[volume_hm3]);
     case.check("acre_feet", &[acre_feet(volume_hm3)]);
+}
+
+/// Degree-day factors as a reader of inches and degF is told them.
+pub fn degree_day_factors(case: &Case) {
+    let mm_per_c: Vec<f64> = case.input("mm_per_c");
+    let told = mm_per_c.into_iter().map(|factor| UnitSystem::Us.degree_day_factor().of(factor));
+    case.check("in_per_f", &told.collect::<Vec<_>>());
 }
