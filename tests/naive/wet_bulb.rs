@@ -12,13 +12,7 @@ pub fn pressure_kpa(elevation_m: f64) -> f64 {
 
 /// The temperature at which evaporation cools no further, degC.
 pub fn wet_bulb_c(mean_c: f64, relative_humidity_pct: f64, elevation_m: f64) -> f64 {
-    let humidity_pct = if relative_humidity_pct < 1.0 {
-        1.0
-    } else if relative_humidity_pct > 100.0 {
-        100.0
-    } else {
-        relative_humidity_pct
-    };
+    let humidity_pct = relative_humidity_pct.clamp(1.0, 100.0);
     let per_c = 0.000665 * pressure_kpa(elevation_m);
     let vapour_kpa = humidity_pct / 100.0 * saturation_kpa(mean_c);
     // Air without any vapour would be the coldest; below -237 degC the formula of saturation makes no sense.
