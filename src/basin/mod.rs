@@ -10,7 +10,7 @@ mod reach;
 pub use bands::{Band, BandColumns, read_bands};
 pub use columns::Column;
 pub use curve::{CurveColumns, read_curve};
-pub use gradients::{PrecipitationGradient, TemperatureGradient};
+pub use gradients::{GradientForm, PrecipitationGradient, TemperatureGradient};
 pub use ground::Ground;
 pub use reach::BeyondStations;
 
@@ -49,6 +49,11 @@ impl Basin {
     pub fn shares(&self) -> Vec<f64> {
         let total = self.area_km2();
         self.bands.iter().map(|band| band.area_km2 / total).collect()
+    }
+
+    /// Mean elevation of the bands, weighted by their areas, m.
+    pub fn mean_elevation_m(&self) -> f64 {
+        self.bands.iter().zip(self.shares()).map(|(band, share)| share * band.elevation_m).sum()
     }
 
     /// Whether the basin lies in the southern hemisphere, which sets the defaults of the seasons.

@@ -49,7 +49,7 @@ impl Basin {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::basin::{Band, Ground, PrecipitationGradient, TemperatureGradient};
+    use crate::basin::{Band, GradientForm, Ground, PrecipitationGradient, TemperatureGradient};
 
     /// By hand: bands of 100 and 300 km2; a station in the middle of the upper one has half of it above, 150 of 400 km2.
     /// With 100 mm below and 500 mm above, the volumes are 10 and 150 hm3, so 75 of 160 lie above.
@@ -66,7 +66,7 @@ mod tests {
             latitude_deg: 40.0,
             bands: vec![band(1000.0, 100.0), band(2000.0, 300.0)],
             temperature: TemperatureGradient::constant(-6.0),
-            precipitation: PrecipitationGradient::new(0.0, None),
+            precipitation: PrecipitationGradient::new(0.0, None, GradientForm::Linear),
         };
         let area = basin.beyond(&[2500.0]).unwrap();
         assert!(

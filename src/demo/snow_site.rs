@@ -2,7 +2,7 @@
 
 use super::place::Place;
 use super::weather::Day;
-use crate::basin::{Basin, Ground, PrecipitationGradient, TemperatureGradient};
+use crate::basin::{Basin, GradientForm, Ground, PrecipitationGradient, TemperatureGradient};
 use crate::perturb::MonthlyChange;
 use crate::snow::{
     DegreeRule, Engine, GaugeMultiplier, LaneSpec, Lanes, OpenLedger, SnowParams, StationPhase, correct_catch,
@@ -73,7 +73,11 @@ impl SnowSite {
             latitude_deg: place.latitude_deg,
             bands: Vec::new(),
             temperature: TemperatureGradient::constant(self.temperature_gradient_c_per_km),
-            precipitation: PrecipitationGradient::new(self.precipitation_gradient_pct_per_100m, None),
+            precipitation: PrecipitationGradient::new(
+                self.precipitation_gradient_pct_per_100m,
+                None,
+                GradientForm::Linear,
+            ),
         };
         let snow = SnowParams {
             degree_day_factor_lowest: self.degree_day_factor_lowest,

@@ -2,6 +2,8 @@
 
 use super::global::GlobalWarming;
 use super::intensity::WetDayChange;
+use crate::basin::Basin;
+use crate::fault::Unlikely;
 use serde::Serialize;
 
 /// How warming is spread over months and what precipitation does with it; the same for every level of a study.
@@ -11,6 +13,8 @@ pub struct Warming {
     pub tmin_monthly_shape: [f64; 12],
     /// The same for daily maxima.
     pub tmax_monthly_shape: [f64; 12],
+    /// Percent of the level by which warming is stronger 1000 m above the basin's mean elevation, and weaker below it.
+    pub level_change_pct_per_1000m: f64,
     /// What precipitation does.
     pub precipitation: PrecipitationChange,
     /// Percent by which wet days bring more for each degree of the level, compounded, where they do: how often it is wet then
@@ -40,11 +44,12 @@ pub struct StatedChange {
 }
 
 impl Default for Warming {
-    /// The same in every month; precipitation stays.
+    /// The same in every month and at every elevation; precipitation stays.
     fn default() -> Self {
         Self {
             tmin_monthly_shape: [1.0; 12],
             tmax_monthly_shape: [1.0; 12],
+            level_change_pct_per_1000m: 0.0,
             precipitation: PrecipitationChange::PctPerC([0.0; 12]),
             wet_day_intensity_pct_per_c: None,
             global: None,
@@ -103,6 +108,32 @@ impl Warming {
         }
     }
 
+    /// What the level's temperature change is multiplied by at an elevation of the basin, `1 + e/100*(z - z_mean)/1000`: its
+    /// area-weighted mean over the bands is 1, so that the basin warms by the level. 1 to the bit where warming is even.
+    pub fn factor_at(&self, elevation_m: f64, basin: &Basin) -> f64 {
+        let rise_m = elevation_m - basin.mean_elevation_m();
+        1.0 + self.level_change_pct_per_1000m / 100.0 * rise_m / 1000.0
+    }
+
+    /// The factors of the lowest and the highest band, where warming changes with elevation.
+    pub fn factors_at_ends(&self, basin: &Basin) -> Option<[f64; 2]> {
+        let ends = [basin.bands.first()?, basin.bands.last()?];
+        let factors = ends.map(|band| self.factor_at(band.elevation_m, basin));
+        (self.level_change_pct_per_1000m != 0.0).then_some(factors)
+    }
+
+    /// What of the warming is unlikely in this basin.
+    pub fn unlikely_in(&self, basin: &Basin) -> Option<Unlikely> {
+        let factors = basin.bands.iter().map(|band| self.factor_at(band.elevation_m, basin));
+        let least = factors.fold(f64::INFINITY, f64::min);
+        (least < 0.0).then(|| {
+            Unlikely::new(
+                "warming.level_change_pct_per_1000m",
+                format!("warms one of the bands by {least:.2} times the level: a level of +1 cools it"),
+            )
+        })
+    }
+
     /// What a level does to wet days, where their intensity changes: `(1 + q/100)^w` on what they bring, and the level's
     /// factor on the mean.
     pub fn wet_days_at(&self, level_c: f64) -> Option<WetDayChange> {
@@ -117,5 +148,49 @@ impl Warming {
     pub fn yearly_mean(shape: &[f64; 12]) -> f64 {
         const DAYS: [f64; 12] = [31.0, 28.0, 31.0, 30.0, 31.0, 30.0, 31.0, 31.0, 30.0, 31.0, 30.0, 31.0];
         shape.iter().zip(DAYS).map(|(value, days)| value * days).sum::<f64>() / 365.0
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::basin::{Band, GradientForm, Ground, PrecipitationGradient, TemperatureGradient};
+
+    fn basin() -> Basin {
+        let band = |lower_m: f64, area_km2: f64| Band {
+            lower_m,
+            upper_m: lower_m + 1000.0,
+            area_km2,
+            elevation_m: lower_m + 500.0,
+            ground: Ground::default(),
+        };
+        Basin {
+            latitude_deg: 40.0,
+            bands: vec![band(1000.0, 100.0), band(2000.0, 300.0)],
+            temperature: TemperatureGradient::constant(-6.0),
+            precipitation: PrecipitationGradient::new(0.0, None, GradientForm::Linear),
+        }
+    }
+
+    /// By hand: 100 km2 about 1500 m and 300 km2 about 2500 m have their mean at 2250 m. 20 % a kilometre are 0.2*(-0.75) at
+    /// the lower and 0.2*0.25 at the upper, and 100*0.85 + 300*1.05 = 400.
+    #[test]
+    fn the_basin_warms_by_the_level() {
+        let basin = basin();
+        let warming = Warming { level_change_pct_per_1000m: 20.0, ..Warming::default() };
+        let found = warming.factors_at_ends(&basin).unwrap();
+        assert!((found[0] - 0.85).abs() < 1e-12 && (found[1] - 1.05).abs() < 1e-12, "{found:?}");
+        assert_eq!(warming.unlikely_in(&basin), None);
+        let even = Warming::default();
+        assert_eq!(even.factor_at(1234.5, &basin).to_bits(), 1.0_f64.to_bits(), "exactly 1 where it is off");
+        assert_eq!(even.factors_at_ends(&basin), None);
+    }
+
+    /// 1 + 1.6*(-0.75) = -0.2, by hand.
+    #[test]
+    fn a_band_that_a_warmer_level_cools_is_said() {
+        let warming = Warming { level_change_pct_per_1000m: 160.0, ..Warming::default() };
+        let said = warming.unlikely_in(&basin()).unwrap();
+        assert_eq!(said.why, "warms one of the bands by -0.20 times the level: a level of +1 cools it");
     }
 }

@@ -16,16 +16,24 @@ pub(super) fn cautions(reader: Reader, warming: &Warming) -> [String; 9] {
         "'In this model, {} makes' is what these numbers say; never that warming caused what a year brought.",
         reader.level(2.0)
     );
+    let (spread, left_out) = match warming.level_change_pct_per_1000m {
+        0.0 => (
+            "Warming is added evenly to every day and band",
+            "inversions and warming that grows with elevation are left out",
+        ),
+        _ => (
+            "Warming is added evenly to every day and changes with elevation as stated (the evidence for such a change is mixed)",
+            "inversions are left out",
+        ),
+    };
     let added = match warming.wet_day_intensity_pct_per_c {
-        None => {
-            "Warming is added evenly to every day and band: storms, wet days, and the link of temperature and precipitation stay \
-             those of the record, inversions and warming that grows with elevation are left out."
-        }
-        Some(_) => {
-            "Warming is added evenly to every day and band, and wet days change in number and amount alone: all by one factor, \
-             the largest as the smallest. A day that has lost its rain stays as cool as it was; inversions and warming that \
-             grows with elevation are left out."
-        }
+        None => format!(
+            "{spread}: storms, wet days, and the link of temperature and precipitation stay those of the record, {left_out}."
+        ),
+        Some(_) => format!(
+            "{spread}, and wet days change in number and amount alone: all by one factor, the largest as the smallest. A day \
+             that has lost its rain stays as cool as it was; {left_out}."
+        ),
     };
     [
     "A planning aid. Not for flood forecasting, flood design, the operation or the safety of dams: local codes, \
@@ -34,7 +42,7 @@ pub(super) fn cautions(reader: Reader, warming: &Warming) -> [String; 9] {
     "The spread holds precipitation's chance and the stated assumptions only. True uncertainty is wider.",
     "Degree-day factors describe melt in the climate they come from. Melt may slow as it moves earlier into the year, \
      and factors change with cloud, albedo and season; no direction of the error is claimed.",
-    added,
+    &added,
     &humidity,
     "Not represented: wind drift, forest interception, sublimation, fire, dust, glaciers, soil, groundwater, \
      evaporation. Snowpack outflow and water input are water leaving the snow and reaching the ground, not streamflow.",

@@ -1,6 +1,7 @@
 //! Quantities as one reader takes them: in the reader's units, rounded to what they can bear, with the unit's word.
 
 use super::numbers::{date, fixed, precision, signed, trimmed};
+use crate::basin::{GradientForm, PrecipitationGradient};
 use crate::calendar::WaterYearStart;
 use crate::season::{Kind, Outcome};
 use crate::units::UnitSystem;
@@ -109,6 +110,31 @@ impl Reader {
     pub fn percent_per_degree(self, pct_per_c: f64) -> String {
         let unit = self.units.percent_per_degree();
         format!("{} {}", signed(unit.of(pct_per_c), 1), unit.word)
+    }
+
+    /// `+4 % per 100 m, linear in the station's precipitation, constant above 3200 m`.
+    pub fn precipitation_gradient(self, gradient: &PrecipitationGradient) -> String {
+        let (unit, form) = match gradient.form() {
+            GradientForm::Linear => {
+                (self.units.precipitation_gradient(), "linear in the station's precipitation")
+            }
+            GradientForm::Compound => (self.units.compound_precipitation_gradient(), "compounded"),
+        };
+        let pct = signed(unit.of(gradient.pct_per_100m()), 2);
+        let top = gradient.top_m().map(|top_m| format!(", constant above {}", self.elevation(top_m)));
+        format!("{} {}, {form}{}", trimmed(&pct), unit.word, top.unwrap_or_default())
+    }
+
+    /// `+10 % per 1000 m above the basin's mean elevation of 2417 m`: how a level changes with elevation.
+    pub fn level_change(self, pct_per_1000m: f64, mean_elevation_m: f64) -> String {
+        let unit = self.units.level_change();
+        let pct = signed(unit.of(pct_per_1000m), 2);
+        format!(
+            "{} {} above the basin's mean elevation of {}",
+            trimmed(&pct),
+            unit.word,
+            self.elevation(mean_elevation_m)
+        )
     }
 
     /// `232 hm³`, `48.1 thousand acre-feet`: a volume of water, to three figures.
@@ -246,5 +272,21 @@ mod tests {
             [metric.percent_per_degree(7.0), us.percent_per_degree(7.0)],
             ["+7.0 % per °C", "+3.8 % per °F"]
         );
+    }
+
+    /// By hand: 4 % per 100 m are 4 * 3.048 % per 304.8 m, 1000 ft; compounded 1.04^3.048 - 1 = 12.70 %. 3200 m are 10 499 ft.
+    #[test]
+    fn gradients_name_their_form() {
+        let [metric, us] = [UnitSystem::Metric, UnitSystem::Us].map(reader);
+        let linear = PrecipitationGradient::new(4.0, Some(3200.0), GradientForm::Linear);
+        let compound = PrecipitationGradient::new(4.0, None, GradientForm::Compound);
+        let constant = "linear in the station's precipitation, constant above";
+        assert_eq!(metric.precipitation_gradient(&linear), format!("+4 % per 100 m, {constant} 3200 m"));
+        assert_eq!(
+            us.precipitation_gradient(&linear),
+            format!("+12.19 % per 1000 ft, {constant} 10\u{2009}499 ft")
+        );
+        assert_eq!(metric.precipitation_gradient(&compound), "+4 % per 100 m, compounded");
+        assert_eq!(us.precipitation_gradient(&compound), "+12.7 % per 1000 ft, compounded");
     }
 }

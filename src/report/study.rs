@@ -70,6 +70,13 @@ pub struct Record<'a> {
     pub detrended: Option<&'a Detrended>,
 }
 
+impl Study<'_> {
+    /// The basin's mean elevation, at which a level is what it is called, where it changes with elevation, m.
+    pub fn mean_elevation_of_warming_m(&self) -> Option<f64> {
+        (self.warming.level_change_pct_per_1000m != 0.0).then(|| self.basin.mean_elevation_m())
+    }
+}
+
 impl Record<'_> {
     /// Mean and coefficient of variation (sample standard deviation over mean) of the headline measure over the record's
     /// years, where it is an amount above 0 in at least two years.

@@ -42,6 +42,8 @@ struct BasinSummary {
     bands: usize,
     lowest_m: f64,
     highest_m: f64,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    mean_elevation_of_warming_m: Option<f64>,
     precipitation_over_station: f64,
     mean_precipitation_mm: f64,
     area_beyond_stations: Option<BeyondStations>,
@@ -99,6 +101,7 @@ pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Ve
             bands: basin.bands.len(),
             lowest_m: basin.bands.first().map_or(0.0, |band| band.lower_m),
             highest_m: basin.bands.last().map_or(0.0, |band| band.upper_m),
+            mean_elevation_of_warming_m: study.mean_elevation_of_warming_m(),
             precipitation_over_station: ratio,
             mean_precipitation_mm: ratio * study.record.mean_precipitation_mm,
             area_beyond_stations: study.beyond_stations,

@@ -2,7 +2,7 @@
 
 use super::hypsometry::{HypsometryTyped, read_hypsometry};
 use super::section::Section;
-use crate::basin::{PrecipitationGradient, TemperatureGradient};
+use crate::basin::{GradientForm, PrecipitationGradient, TemperatureGradient};
 use crate::fault::Fault;
 
 /// The basin as typed: its hypsometry stands in a file of its own.
@@ -59,12 +59,13 @@ fn read_around(mut section: Section<'_>, hypsometry: Option<HypsometryTyped>) ->
         -500.0..=9000.0,
         "the elevation above which precipitation grows no further, m",
     );
+    let form = section.choice_or("precipitation_gradient_form", &GradientForm::NAMES, "linear");
     section.finish();
     Some(BasinTyped {
         latitude_deg: latitude_deg?,
         hypsometry: hypsometry?,
         temperature: TemperatureGradient { tmin_c_per_km: tmin?, tmax_c_per_km: tmax? },
-        precipitation: PrecipitationGradient::new(pct_per_100m?, top_m),
+        precipitation: PrecipitationGradient::new(pct_per_100m?, top_m, form?),
     })
 }
 

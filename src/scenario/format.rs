@@ -23,9 +23,9 @@ pub(super) fn read_format(section: &mut Section<'_>) -> Option<Format> {
 /// The same of a file in which every cell must be filled.
 pub(super) fn read_layout(section: &mut Section<'_>) -> Option<Format> {
     let separator = section.text_or("separator", ",");
-    let decimal = named(section, "decimal", &Decimal::NAMES, ".");
+    let decimal = section.choice_or("decimal", &Decimal::NAMES, ".");
     let comment = section.text_or("comment", "#");
-    let encoding = named(section, "encoding", &Encoding::NAMES, "utf-8");
+    let encoding = section.choice_or("encoding", &Encoding::NAMES, "utf-8");
     let header_line = section.whole_in("header_line", 1..=FARTHEST_HEADER, 12).map(|line| line as usize);
     let separator = one_byte(section, "separator", &separator);
     let comment =
@@ -38,20 +38,6 @@ pub(super) fn read_layout(section: &mut Section<'_>) -> Option<Format> {
         header_line,
         missing: Vec::new(),
     })
-}
-
-/// One of several words, or the default, which is one of them.
-fn named<T: Copy>(
-    section: &mut Section<'_>,
-    key: &'static str,
-    choices: &[(&'static str, T)],
-    default: &str,
-) -> Option<T> {
-    if section.has(key) {
-        return section.choice(key, choices);
-    }
-    section.text_or(key, default);
-    choices.iter().find(|(word, _)| *word == default).map(|(_, choice)| *choice)
 }
 
 fn one_byte(section: &Section<'_>, key: &str, text: &str) -> Option<u8> {

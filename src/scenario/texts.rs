@@ -71,6 +71,20 @@ impl<'d> Section<'d> {
         None
     }
 
+    /// One of several words, or the default, which is one of them.
+    pub fn choice_or<T: Copy>(
+        &mut self,
+        key: &'static str,
+        choices: &[(&'static str, T)],
+        default: &str,
+    ) -> Option<T> {
+        if self.has(key) {
+            return self.choice(key, choices);
+        }
+        self.text_or(key, default);
+        choices.iter().find(|(word, _)| *word == default).map(|(_, choice)| *choice)
+    }
+
     /// One of several words that must be there.
     pub fn required_choice<T: Copy>(
         &mut self,

@@ -22,6 +22,7 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
     let reference_c =
         section.number_or("reference_c", 0.0, -10.0..=15.0, "the level all others are compared with");
     let [tmin_monthly_shape, tmax_monthly_shape] = read_shapes(&mut section);
+    let level_change_pct_per_1000m = read_level_change(&mut section);
     let typed_c = levels.as_ref().map(|levels| levels.typed_c.as_slice());
     let precipitation = read_precipitation_change(&mut section, typed_c, reference_c);
     let wet_day_intensity_pct_per_c = read_intensity(&mut section);
@@ -35,11 +36,33 @@ pub(super) fn read(mut section: Section<'_>) -> Option<WarmingTyped> {
     let warming = Warming {
         tmin_monthly_shape,
         tmax_monthly_shape,
+        level_change_pct_per_1000m,
         precipitation: precipitation?,
         wet_day_intensity_pct_per_c,
         global,
     };
     Some(WarmingTyped { levels_c, reference, warming })
+}
+
+/// Whether mountains warm more than what lies below them is an open question (Pepin et al. 2015, Nature Climate Change 5:424,
+/// from memory); the limits are ours.
+const USUAL_LEVEL_CHANGE_PCT: std::ops::RangeInclusive<f64> = -30.0..=30.0;
+
+fn read_level_change(section: &mut Section<'_>) -> f64 {
+    let key = "level_change_pct_per_1000m";
+    let pct = section.number_or(
+        key,
+        0.0,
+        -100.0..=100.0,
+        "percent of the level that 1000 m more of elevation add to it; 0 warms every elevation alike",
+    );
+    if !USUAL_LEVEL_CHANGE_PCT.contains(&pct) {
+        section.unlikely(
+            key,
+            "outside -30 to 30 percent per 1000 m; evidence for warming that changes with elevation is mixed",
+        );
+    }
+    pct
 }
 
 /// Extremes of daily precipitation follow the water that air can hold, about 7 % a degree, or somewhat more (IPCC AR6 WGI

@@ -100,6 +100,20 @@ impl UnitSystem {
         self.either(("% per 100 m", "pct_per_100m"), us, |pct| pct * LengthUnit::Foot.to_metres(10.0))
     }
 
+    /// Of the same compounded, each 100 m on the last.
+    pub fn compound_precipitation_gradient(self) -> Unit {
+        let us = ("% per 1000 ft", "pct_per_1000ft");
+        self.either(("% per 100 m", "pct_per_100m"), us, |pct| {
+            100.0 * libm::expm1(libm::log1p(pct / 100.0) * LengthUnit::Foot.to_metres(10.0))
+        })
+    }
+
+    /// Of a change of a warming level with elevation in percent per 1000 m.
+    pub fn level_change(self) -> Unit {
+        let us = ("% per 1000 ft", "pct_per_1000ft");
+        self.either(("% per 1000 m", "pct_per_1000m"), us, |pct| pct * LengthUnit::Foot.to_metres(1.0))
+    }
+
     /// Of a change with warming in percent per degC, compounded.
     pub fn percent_per_degree(self) -> Unit {
         self.either(("% per °C", "pct_per_degC"), ("% per °F", "pct_per_degF"), |pct_per_c| {
@@ -151,6 +165,9 @@ mod tests {
         // By hand: -6.5 degC per 1000 m is -11.7 degF per 3280.84 ft; 5 % per 100 m is 5 * 3.048 % per 304.8 m.
         near(us(UnitSystem::temperature_gradient, -6.5), -11.7 * 0.3048);
         near(us(UnitSystem::precipitation_gradient, 5.0), 15.24);
+        // Compounded: 1.05^3.048 = 1.160339251312095... (Python's decimal module, 50 digits).
+        near(us(UnitSystem::level_change, 10.0), 3.048);
+        near(us(UnitSystem::compound_precipitation_gradient, 5.0), 16.033_925_131_209_5);
         // Compounded: 1.8 degF bring what 1 degC does, so 1 + 0.1 per degF is 1.1^1.8 per degC, here 1.1^2 per 10/9 degC.
         near(us(UnitSystem::percent_per_degree, 100.0 * (libm::pow(1.1, 1.8) - 1.0)), 10.0);
         near(us(UnitSystem::percent_per_degree, -100.0), -100.0);
@@ -183,6 +200,8 @@ mod tests {
             UnitSystem::degree_day_factor,
             UnitSystem::temperature_gradient,
             UnitSystem::precipitation_gradient,
+            UnitSystem::compound_precipitation_gradient,
+            UnitSystem::level_change,
             UnitSystem::percent_per_degree,
         ];
         for unit in all {

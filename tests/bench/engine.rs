@@ -18,7 +18,7 @@ use rand::rngs::ChaCha8Rng;
 use rand::{RngExt, SeedableRng};
 use std::hint::black_box;
 use std::time::Instant;
-use thawline::basin::{Basin, Ground, PrecipitationGradient, TemperatureGradient};
+use thawline::basin::{Basin, GradientForm, Ground, PrecipitationGradient, TemperatureGradient};
 use thawline::perturb::{MonthlyChange, Warming};
 use thawline::snow::{DegreeRule, Engine, LaneSpec, Lanes, PhaseRule, SnowParams};
 use thawline::weather::{Series, YearSpan};
@@ -102,7 +102,11 @@ impl Bench {
                 latitude_deg: 45.0,
                 bands: Vec::new(),
                 temperature: TemperatureGradient::constant(LAPSE_C_PER_KM),
-                precipitation: PrecipitationGradient::new(PRECIPITATION_PCT_PER_100M, None),
+                precipitation: PrecipitationGradient::new(
+                    PRECIPITATION_PCT_PER_100M,
+                    None,
+                    GradientForm::Linear,
+                ),
             },
             elevations_m: (0..bands)
                 .map(|band| 1500.0 + 1500.0 * (band as f64 + 0.5) / bands as f64)

@@ -1,6 +1,7 @@
 //! The program as a user runs it: whole commands, their output, their files and their exit status.
 
 pub mod basin;
+mod by_elevation;
 mod closed_form;
 mod corpus;
 mod data_faults;

@@ -8,7 +8,7 @@ use proptest::collection::vec;
 use proptest::prelude::*;
 use rand::rngs::ChaCha8Rng;
 use rand::{RngExt, SeedableRng};
-use thawline::basin::{Band, Basin, Ground, PrecipitationGradient, TemperatureGradient};
+use thawline::basin::{Band, Basin, GradientForm, Ground, PrecipitationGradient, TemperatureGradient};
 use thawline::calendar::{MonthDay, WaterYearStart};
 use thawline::perturb::{MonthlyChange, PrecipitationChange, StatedChange, Warming};
 use thawline::snow::{
@@ -137,7 +137,7 @@ prop_compose! {
                 latitude_deg: if climate.is_southern { -45.0 } else { 45.0 },
                 bands: bands.collect(),
                 temperature: TemperatureGradient { tmin_c_per_km, tmax_c_per_km },
-                precipitation: PrecipitationGradient::new(precipitation_pct_per_100m, precipitation_top_m),
+                precipitation: PrecipitationGradient::new(precipitation_pct_per_100m, precipitation_top_m, GradientForm::Linear),
             },
             station_m,
             precipitation_pct_per_100m,

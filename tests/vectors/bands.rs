@@ -3,7 +3,7 @@
 use super::case::Case;
 use super::closed_season::{self, Season};
 use super::days::{flat_basin, one_year, plain_snow};
-use thawline::basin::{Basin, Ground, PrecipitationGradient, TemperatureGradient};
+use thawline::basin::{Basin, GradientForm, Ground, PrecipitationGradient, TemperatureGradient};
 use thawline::perturb::{MonthlyChange, Warming};
 use thawline::snow::{Engine, LaneSpec, Lanes, SnowParams};
 
@@ -48,7 +48,11 @@ pub fn weather_over_bands(case: &Case) {
     let mut basin = flat_basin();
     basin.temperature = TemperatureGradient::constant(-case.input::<f64>("lapse_c_per_km"));
     let gradient: Option<f64> = case.input_or_none("gradient_pct_per_100m");
-    basin.precipitation = PrecipitationGradient::new(gradient.unwrap_or(0.0), None);
+    let form = match case.input_or_none::<bool>("is_compound") {
+        Some(true) => GradientForm::Compound,
+        _ => GradientForm::Linear,
+    };
+    basin.precipitation = PrecipitationGradient::new(gradient.unwrap_or(0.0), None, form);
     let precipitation_mm: f64 = case.input_or_none("precipitation_mm").unwrap_or(0.0);
     let change = Warming::default().at(case.input_or_none("level_c").unwrap_or(0.0));
     let snow = plain_snow(case);

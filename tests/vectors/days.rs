@@ -2,7 +2,7 @@
 
 use super::case::Case;
 use chrono::{Datelike, NaiveDate};
-use thawline::basin::{Basin, Ground, PrecipitationGradient, TemperatureGradient};
+use thawline::basin::{Basin, GradientForm, Ground, PrecipitationGradient, TemperatureGradient};
 use thawline::calendar::MonthDay;
 use thawline::perturb::{MonthlyChange, Warming};
 use thawline::snow::{
@@ -61,7 +61,7 @@ pub fn flat_basin() -> Basin {
         latitude_deg: 45.0,
         bands: Vec::new(),
         temperature: TemperatureGradient::constant(0.0),
-        precipitation: PrecipitationGradient::new(0.0, None),
+        precipitation: PrecipitationGradient::new(0.0, None, GradientForm::Linear),
     }
 }
 

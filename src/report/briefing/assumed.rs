@@ -27,12 +27,15 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             @for (name, what) in options(reader, snow) { dt { (name) } dd { (what) } }
             dt { "Gauge" } dd { "what was caught times " (study.gauge_multiplier.snow) " for snow and " (study.gauge_multiplier.rain)
                 " for rain, once, at the observed temperature" }
-            dt { "Elevation" } dd { "station at " (reader.elevation(study.station_elevation_m)) "; basin-mean precipitation is "
+            dt { "Elevation" } dd { "station at " (reader.elevation(study.station_elevation_m)) "; precipitation changes with elevation by "
+                (reader.precipitation_gradient(&study.basin.precipitation)) "; the basin's mean is "
                 (fixed(study.basin.precipitation_ratio(study.station_elevation_m), 2)) " times the station's, so "
                 (reader.amount(study.basin.precipitation_ratio(study.station_elevation_m) * study.record.mean_precipitation_mm)) " a year"
                 @if let Some(beyond) = study.beyond_stations { "; " (fixed(100.0 * beyond.share_above, 0)) " % of the area lies above the highest station and "
                     (fixed(100.0 * beyond.share_below, 0)) " % below the lowest, where results hang on the gradients alone" } }
             dt { "Warming" } dd { "added to every day's temperatures; "
+                @if let Some(mean_m) = study.mean_elevation_of_warming_m() { "a level is the basin's, and changes with elevation by "
+                    (reader.level_change(study.warming.level_change_pct_per_1000m, mean_m)) ", as stated; " }
                 @match study.warming.wet_day_intensity_pct_per_c {
                     None => { "storms, wet days and their order stay; precipitation changes " (precipitation_in_words(reader, &study.warming.precipitation)) }
                     Some(pct_per_c) => { (wet_days_in_words(reader, study, pct_per_c)) }

@@ -4,7 +4,7 @@ use super::super::SCHEMA_VERSION;
 use super::Checked;
 use super::observed::SiteDocument;
 use crate::baseline::{Baseline, BaselineYears, Detrended, wilson};
-use crate::basin::{Band, BeyondStations};
+use crate::basin::{Band, BeyondStations, PrecipitationGradient};
 use crate::ensemble::BandClimate;
 use crate::findings::GeneratorSheet;
 use crate::perturb::Warming;
@@ -30,6 +30,7 @@ struct Document<'a> {
     gauge_multiplier: GaugeMultiplier,
     station_precipitation_mm_per_year: f64,
     basin_precipitation_mm_per_year: f64,
+    precipitation_gradient: PrecipitationGradient,
     station_snow_fraction: f64,
     basin_snow_fraction: Option<f64>,
     basin_area_km2: f64,
@@ -103,6 +104,7 @@ impl Checked<'_> {
             gauge_multiplier: self.gauge_multiplier,
             station_precipitation_mm_per_year: self.station_precipitation_mm,
             basin_precipitation_mm_per_year: self.station_precipitation_mm * self.precipitation_ratio(),
+            precipitation_gradient: self.basin.precipitation,
             station_snow_fraction: self.station_snow_fraction,
             basin_snow_fraction: self.basin_snow_fraction(),
             basin_area_km2: self.basin.area_km2(),

@@ -165,6 +165,17 @@ impl Checked<'_> {
             });
             page.line("  as global warming", of_each.collect::<Vec<_>>().join("; "));
         }
+        if let Some([lowest, highest]) = self.warming.factors_at_ends(self.basin) {
+            let (pct, mean_m) = (self.warming.level_change_pct_per_1000m, self.basin.mean_elevation_m());
+            let [lowest, highest] = [lowest, highest].map(|factor| fixed(factor, 2));
+            page.line(
+                "change with elevation",
+                format!(
+                    "{}: times {lowest} in the lowest band, {highest} in the highest",
+                    self.reader.level_change(pct, mean_m)
+                ),
+            );
+        }
         let changes: Vec<[f64; 12]> = self
             .levels_c
             .iter()

@@ -122,6 +122,7 @@ impl Checked<'_> {
                 fixed(ratio, 2)
             ),
         );
+        page.line("precipitation gradient", reader.precipitation_gradient(&self.basin.precipitation));
         let basin = self.basin_snow_fraction().map_or("none".to_owned(), Self::percent);
         page.line(
             "snow fraction",
