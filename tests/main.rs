@@ -8,5 +8,6 @@ mod golden;
 mod invariants;
 mod naive;
 mod naive_season;
+mod plausibility;
 mod record;
 mod vectors;

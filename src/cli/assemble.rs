@@ -302,7 +302,7 @@ impl Ready {
 
     /// Lanes of every band under each change, and a basin mean for each.
     pub fn lanes(&self, changes: &[MonthlyChange]) -> Lanes {
-        let shares = self.basin.shares();
+        let (shares, warming) = (self.basin.shares(), &self.scenario.warming.warming);
         let groups: Vec<Vec<LaneSpec<'_>>> = changes
             .iter()
             .map(|change| {
@@ -314,6 +314,7 @@ impl Ready {
                         elevation_m: band.elevation_m,
                         ground: band.ground,
                         change,
+                        warming_factor: warming.factor_at(band.elevation_m, &self.basin),
                         snow: &self.scenario.snow,
                         share: *share,
                     })

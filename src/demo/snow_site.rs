@@ -94,6 +94,7 @@ impl SnowSite {
             elevation_m: self.elevation_m,
             ground: Ground::default(),
             change: &MonthlyChange::NONE,
+            warming_factor: 1.0,
             snow: &snow,
             share: 1.0,
         }]]);

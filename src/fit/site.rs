@@ -52,6 +52,7 @@ pub fn compare(sites: &[Site<'_>], model: &Model<'_>) -> Result<Vec<Comparison>,
         elevation_m: site.elevation_m,
         ground: Ground::default(),
         change: &MonthlyChange::NONE,
+        warming_factor: 1.0,
         snow: &snow,
         share: 1.0 / sites.len() as f64,
     });

@@ -25,6 +25,8 @@ pub struct LaneSpec<'a> {
     pub ground: Ground,
     /// Warming and precipitation change.
     pub change: &'a MonthlyChange,
+    /// What the warming is multiplied by here; 1 where it is the same at every elevation.
+    pub warming_factor: f64,
     /// Parameters.
     pub snow: &'a SnowParams,
     /// Share of its basin mean.
@@ -212,8 +214,10 @@ impl Lanes {
         let by_elevation = spec.basin.precipitation.factor(spec.station_m, spec.elevation_m);
         for month in 0..12 {
             let at = month * self.width + lane;
-            let tmin_c = spec.change.tmin_c[month] + gradient.tmin_c_per_km[month] * rise_km;
-            let tmax_c = spec.change.tmax_c[month] + gradient.tmax_c_per_km[month] * rise_km;
+            let tmin_c =
+                spec.warming_factor * spec.change.tmin_c[month] + gradient.tmin_c_per_km[month] * rise_km;
+            let tmax_c =
+                spec.warming_factor * spec.change.tmax_c[month] + gradient.tmax_c_per_km[month] * rise_km;
             self.mean_offset_c[at] = (tmin_c + tmax_c) / 2.0;
             self.half_range_offset_c[at] = (tmax_c - tmin_c) / 2.0;
             self.precipitation_factor[at] = spec.change.precipitation_factor[month] * by_elevation;

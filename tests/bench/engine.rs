@@ -130,6 +130,7 @@ impl Bench {
                 elevation_m: *elevation_m,
                 ground: Ground::default(),
                 change,
+                warming_factor: 1.0,
                 snow: &self.snow,
                 share: 1.0 / self.elevations_m.len() as f64,
             });

@@ -205,6 +205,7 @@ impl Scenario {
                 elevation_m: band.elevation_m,
                 ground: band.ground,
                 change,
+                warming_factor: 1.0,
                 snow: &self.snow,
                 share: *share,
             })

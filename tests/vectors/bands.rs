@@ -31,6 +31,7 @@ impl UniformArea {
                 elevation_m: self.lowest_m + width_m * (band as f64 + 0.5),
                 ground: Ground::default(),
                 change,
+                warming_factor: 1.0,
                 snow,
                 share: 1.0 / bands as f64,
             });
@@ -62,6 +63,7 @@ pub fn weather_over_bands(case: &Case) {
         elevation_m: *elevation_m,
         ground: Ground::default(),
         change: &change,
+        warming_factor: 1.0,
         snow: &snow,
         share: 1.0 / elevations_m.len() as f64,
     };

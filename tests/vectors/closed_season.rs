@@ -113,6 +113,7 @@ pub fn closed_season(case: &Case) {
             elevation_m: 0.0,
             ground: Ground::default(),
             change,
+            warming_factor: 1.0,
             snow: &snow,
             share: 1.0,
         }]

@@ -84,6 +84,7 @@ fn run_one_band(case: &Case, change: &MonthlyChange) -> YearBlock {
         elevation_m: 0.0,
         ground: Ground::default(),
         change,
+        warming_factor: 1.0,
         snow: &snow,
         share: 1.0,
     };
