@@ -2,9 +2,10 @@
 
 use super::cases;
 use super::scenario::{Scenario, naive_days, scenarios};
+use super::with_options::scenarios_with_options;
 use crate::naive;
 use proptest::prelude::*;
-use thawline::snow::{Path, YearBlock};
+use thawline::snow::{Lanes, Path, YearBlock};
 use thawline::weather::Series;
 
 /// Two ways of adding the same numbers may part by rounding: 1e-9 mm is what the method promises, about a million
@@ -23,58 +24,84 @@ proptest! {
     /// years with snow carried over, for both degree rules and both phase rules, at levels of any sign.
     #[test]
     fn engine_is_the_method(scenario in scenarios()) {
-        let series = scenario.climate.series();
-        let lanes = scenario.lanes(&scenario.changes());
-        let blocks = Scenario::run(&lanes, &series, Path::Widest);
-        let (days, starts_bare) = naive_days(&series);
-        let areas: Vec<f64> = scenario.basin.bands.iter().map(|band| band.area_km2).collect();
-        for (mix, level_c) in scenario.levels_c.iter().enumerate() {
-            let mut bands = Vec::new();
-            for band in 0..areas.len() {
-                let naive = naive::run(&scenario.naive_band(band, *level_c), &days, &starts_bare);
-                check_lane(&blocks, &series, lanes.column(mix, band), &naive)?;
-                bands.push(naive);
-            }
-            check_basin(&blocks, &series, mix, &bands, &areas)?;
-        }
+        check(&scenario)?;
+    }
+
+    /// The same with any of the options on: slopes, trees, patches, a cold store, losses to the air, the wet bulb, each year
+    /// from bare ground.
+    #[test]
+    fn engine_is_the_method_with_options(scenario in scenarios_with_options()) {
+        check(&scenario)?;
     }
 }
 
-fn check_lane(
+fn check(scenario: &Scenario) -> Result<(), TestCaseError> {
+    let series = scenario.climate.series();
+    let lanes = scenario.lanes(&scenario.changes());
+    let blocks = Scenario::run(&lanes, &series, Path::Widest);
+    let (days, starts_bare) = naive_days(&series, &scenario.snow);
+    let areas: Vec<f64> = scenario.basin.bands.iter().map(|band| band.area_km2).collect();
+    for (mix, level_c) in scenario.levels_c.iter().enumerate() {
+        let mut bands = Vec::new();
+        for band in 0..areas.len() {
+            let naive = naive::run(&scenario.naive_band(band, *level_c), &days, &starts_bare);
+            check_band(&blocks, &series, &lanes, (mix, band), &naive)?;
+            bands.push(naive);
+        }
+        check_basin(&blocks, &series, mix, &bands, &areas)?;
+    }
+    Ok(())
+}
+
+fn check_band(
     blocks: &[YearBlock],
     series: &Series,
-    lane: usize,
+    lanes: &Lanes,
+    (mix, band): (usize, usize),
     naive: &[naive::DayResult],
 ) -> Result<(), TestCaseError> {
+    let column = lanes.column(mix, band);
     for (block, year) in blocks.iter().zip(&series.years) {
         prop_assert_eq!(block.days, year.days);
         prop_assert_eq!(block.first, year.first);
         let detail = block.detail.as_ref().expect("detail was asked for");
         for day in 0..year.days {
             let expected = &naive[year.start + day];
-            let (at, at_detail) = (day * block.width + lane, day * detail.width + lane);
+            let at = day * block.width + column;
+            let of_lanes = |table: &[f64]| {
+                let row = table.get(day * detail.width..(day + 1) * detail.width);
+                row.map_or(0.0, |row| lanes.of_place(mix, band, row))
+            };
             let net_melt = expected.melt_mm - expected.refreeze_mm;
             for (what, engine, naive) in [
-                ("mean temperature", detail.mean_c[at_detail], expected.mean_c),
+                ("mean temperature", of_lanes(&detail.mean_c), expected.mean_c),
                 ("rain", block.rain_mm[at], expected.rain_mm),
                 ("snow", block.snow_mm[at], expected.snow_mm),
-                ("melt", detail.melt_mm[at_detail], expected.melt_mm),
-                ("refreezing", detail.refreeze_mm[at_detail], expected.refreeze_mm),
-                ("ice", detail.ice_mm[at_detail], expected.ice_mm),
-                ("liquid", detail.liquid_mm[at_detail], expected.liquid_mm),
+                ("melt", of_lanes(&detail.melt_mm), expected.melt_mm),
+                ("refreezing", of_lanes(&detail.refreeze_mm), expected.refreeze_mm),
+                ("ice", of_lanes(&detail.ice_mm), expected.ice_mm),
+                ("liquid", of_lanes(&detail.liquid_mm), expected.liquid_mm),
                 ("SWE", block.swe_mm[at], expected.swe_mm),
                 ("net melt", block.net_melt_mm[at], net_melt),
                 ("outflow", block.outflow_mm[at], expected.outflow_mm),
                 ("bare-ground rain", block.bare_ground_rain_mm[at], expected.bare_ground_rain_mm),
+                ("sublimation", of_table(&block.sublimation_mm, at), expected.sublimation_mm),
+                ("cold content", of_lanes(&detail.cold_mm), expected.cold_mm),
+                ("covered share", block.covered_share(day, column), expected.covered_share),
             ] {
                 assert_same(engine, naive, what, day + 1)?;
             }
         }
         let last = &naive[year.start + year.days - 1];
-        let end = block.swe_mm[year.days * block.width + lane];
+        let end = block.swe_mm[year.days * block.width + column];
         assert_same(end, last.ice_mm + last.liquid_mm, "SWE as the year ends", year.days)?;
     }
     Ok(())
+}
+
+/// A number of a table that has no rows where its option is off.
+fn of_table(table: &[f64], at: usize) -> f64 {
+    table.get(at).copied().unwrap_or(0.0)
 }
 
 fn check_basin(
@@ -98,6 +125,8 @@ fn check_basin(
                 ("basin bare-ground rain", block.bare_ground_rain_mm[at], mean(|r| r.bare_ground_rain_mm)),
                 ("basin rain", block.rain_mm[at], mean(|r| r.rain_mm)),
                 ("basin snow", block.snow_mm[at], mean(|r| r.snow_mm)),
+                ("basin sublimation", of_table(&block.sublimation_mm, at), mean(|r| r.sublimation_mm)),
+                ("basin cover", block.covered_share(day, block.mixes_at + mix), mean(|r| r.covered_share)),
             ] {
                 assert_same(engine, naive, what, day + 1)?;
             }

@@ -2,6 +2,7 @@
 
 use super::cases;
 use super::scenario::{Scenario, scenarios};
+use super::with_options::scenarios_with_options;
 use proptest::prelude::*;
 use thawline::perturb::PrecipitationChange;
 use thawline::snow::{Path, YearBlock};
@@ -9,10 +10,10 @@ use thawline::snow::{Path, YearBlock};
 proptest! {
     #![proptest_config(cases(64))]
 
-    /// Rain and snow equal outflow, bare-ground rain and change of SWE, for every lane and year, reckoned from the
+    /// Rain and snow equal outflow, bare-ground rain, sublimation and change of SWE, for every lane and year, reckoned from the
     /// daily table alone; 1e-9 of the larger side, as the method states it.
     #[test]
-    fn ledger_closes(scenario in scenarios()) {
+    fn ledger_closes(scenario in prop_oneof![scenarios(), scenarios_with_options()]) {
         let lanes = scenario.lanes(&scenario.changes());
         for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
             for lane in 0..lanes.count() {
@@ -21,7 +22,9 @@ proptest! {
                 let change_mm = end - block.swe_mm[lane];
                 let outflow_mm = column_sum(&block, &block.outflow_mm, lane);
                 let bare_mm = column_sum(&block, &block.bare_ground_rain_mm, lane);
-                let accounted_mm = outflow_mm + bare_mm + change_mm;
+                let sublimation_mm =
+                    if lanes.has_stores() { column_sum(&block, &block.sublimation_mm, lane) } else { 0.0 };
+                let accounted_mm = outflow_mm + bare_mm + sublimation_mm + change_mm;
                 let larger_mm = input_mm.abs().max(accounted_mm.abs()).max(1.0);
                 prop_assert!((input_mm - accounted_mm).abs() <= 1e-9 * larger_mm, "{input_mm} in, {accounted_mm} out");
             }
@@ -30,7 +33,7 @@ proptest! {
 
     /// No state and no flux but net melt is ever negative, to the last bit; the basin means neither.
     #[test]
-    fn nothing_is_negative(scenario in scenarios()) {
+    fn nothing_is_negative(scenario in prop_oneof![scenarios(), scenarios_with_options()]) {
         let lanes = scenario.lanes(&scenario.changes());
         for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
             let detail = block.detail.as_ref().expect("detail was asked for");
@@ -44,6 +47,9 @@ proptest! {
                 ("refreezing", &detail.refreeze_mm[..block.days * detail.width]),
                 ("ice", &detail.ice_mm[..block.days * detail.width]),
                 ("liquid", &detail.liquid_mm[..block.days * detail.width]),
+                ("cold content", &detail.cold_mm[..]),
+                ("sublimation", &block.sublimation_mm[..]),
+                ("covered share", &block.covered[..]),
             ];
             for (what, values) in columns {
                 for value in values {

@@ -13,6 +13,7 @@ mod season_sums;
 mod seasons;
 mod sun;
 mod wet_days;
+mod with_options;
 
 use proptest::test_runner::Config;
 

@@ -2,9 +2,10 @@
 
 use super::cases;
 use super::scenario::{Scenario, scenarios};
+use super::with_options::scenarios_with_options;
 use proptest::prelude::*;
 use thawline::perturb::MonthlyChange;
-use thawline::snow::{Engine, Path, YearBlock};
+use thawline::snow::{Engine, Patchiness, Path, Radiation, Sublimation, YearBlock};
 
 /// The bits of everything in a year that is in use.
 fn bits(block: &YearBlock) -> Vec<u64> {
@@ -16,12 +17,15 @@ fn bits(block: &YearBlock) -> Vec<u64> {
     values.extend_from_slice(&block.bare_ground_rain_mm[..end]);
     values.extend_from_slice(&block.rain_mm[..end]);
     values.extend_from_slice(&block.snow_mm[..end]);
+    values.extend_from_slice(block.sublimation_mm.get(..end).unwrap_or_default());
+    values.extend_from_slice(&block.covered[..block.days * (row - block.means_at)]);
     if let Some(detail) = &block.detail {
         let end = block.days * detail.width;
         for table in [&detail.mean_c, &detail.melt_mm, &detail.refreeze_mm, &detail.ice_mm, &detail.liquid_mm]
         {
             values.extend_from_slice(&table[..end]);
         }
+        values.extend_from_slice(detail.cold_mm.get(..end).unwrap_or_default());
     }
     values.into_iter().map(f64::to_bits).collect()
 }
@@ -31,7 +35,7 @@ proptest! {
 
     /// The same bits whatever vectors the CPU has: a study can be repeated on another machine.
     #[test]
-    fn vectors_do_not_show(scenario in scenarios()) {
+    fn vectors_do_not_show(scenario in prop_oneof![scenarios(), scenarios_with_options()]) {
         let series = scenario.climate.series();
         let lanes = scenario.lanes(&scenario.changes());
         let widest = Scenario::run(&lanes, &series, Path::Widest);
@@ -51,6 +55,28 @@ proptest! {
         let record = Scenario::run(&scenario.lanes(&[MonthlyChange::NONE]), &series, Path::Widest);
         for (a, b) in zero.iter().zip(&record) {
             prop_assert!(bits(a) == bits(b));
+        }
+    }
+
+    /// Snow without variation is the plain band, whatever the number of classes; a cold store that never follows the weather
+    /// and holds nothing, a loss of nothing and a factor of radiation of 0 are none.
+    #[test]
+    fn options_of_nothing_are_none(scenario in scenarios(), classes in 2..8_usize) {
+        let series = scenario.climate.series();
+        let changes = scenario.changes();
+        let plain = Scenario::run(&scenario.lanes(&changes), &series, Path::Widest);
+        let mut nothing = scenario.clone();
+        nothing.snow.options.patchiness = Some(Patchiness { coefficient_of_variation: 0.0, classes });
+        nothing.snow.options.sublimation = Some(Sublimation { mm_per_day: [0.0; 12], snowfall_fraction: 0.0 });
+        nothing.snow.options.radiation = Some(Radiation { factor_mm_per_c_day: 0.0 });
+        let with = Scenario::run(&nothing.lanes(&changes), &series, Path::Widest);
+        for (a, b) in plain.iter().zip(with) {
+            prop_assert!(b.sublimation_mm.iter().all(|mm| *mm == 0.0));
+            let mut b = YearBlock { sublimation_mm: Vec::new(), ..b };
+            if let Some(detail) = &mut b.detail {
+                detail.cold_mm.clear();
+            }
+            prop_assert!(bits(a) == bits(&b));
         }
     }
 

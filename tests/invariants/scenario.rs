@@ -1,6 +1,7 @@
 //! Random scenarios: a basin, a few years of weather, warming levels and snow parameters, and how to run them through
 //! the engine and through the naive loop.
 
+use super::with_options::naive_options;
 use crate::naive;
 use chrono::{Datelike, NaiveDate};
 use proptest::array::uniform12;
@@ -23,6 +24,7 @@ pub struct Scenario {
     pub station_m: f64,
     pub precipitation_pct_per_100m: f64,
     pub precipitation_top_m: Option<f64>,
+    pub gradient_form: naive::GradientForm,
     pub levels_c: Vec<f64>,
     pub warming: Warming,
     pub snow: SnowParams,
@@ -142,6 +144,7 @@ prop_compose! {
             station_m,
             precipitation_pct_per_100m,
             precipitation_top_m,
+            gradient_form: naive::GradientForm::Linear,
             levels_c,
             warming,
             snow,
@@ -188,6 +191,7 @@ impl Climate {
         let is_wet = random.random::<f64>() < self.wet_chance;
         let amount_mm = -self.wet_day_mm * libm::log(1.0 - random.random::<f64>());
         series.precipitation_mm.push(if is_wet { amount_mm } else { 0.0 });
+        series.relative_humidity_pct.push(100.0 * random.random::<f64>());
         series.month.push(date.month0() as u8);
         series.day_of_year.push(date.ordinal() as u16);
     }
@@ -205,7 +209,7 @@ impl Scenario {
                 elevation_m: band.elevation_m,
                 ground: band.ground,
                 change,
-                warming_factor: 1.0,
+                warming_factor: self.warming.factor_at(band.elevation_m, &self.basin),
                 snow: &self.snow,
                 share: *share,
             })
@@ -264,7 +268,9 @@ impl Scenario {
                 }
                 PhaseRule::Step { half_snow_at_c } => naive::Phase::Step { threshold_c: half_snow_at_c },
                 PhaseRule::Tanh => naive::Phase::Tanh,
-                PhaseRule::SCurve { .. } => unreachable!("not drawn"),
+                PhaseRule::SCurve { half_snow_at_c, mixed_range_c } => {
+                    naive::Phase::SCurve { half_snow_c: half_snow_at_c, mixed_range_c }
+                }
             },
             degrees: match self.snow.degree_rule {
                 DegreeRule::Mean => naive::Degrees::Mean,
@@ -276,16 +282,16 @@ impl Scenario {
             melt_base_c: self.snow.melt_base_c,
             refreeze_fraction: self.snow.refreeze_fraction,
             holding_fraction: self.snow.liquid_holding_fraction,
-            options: naive::Options::default(),
+            options: naive_options(self, band),
         }
     }
 }
 
 /// Station days as the naive loop wants them, and where it starts on bare ground.
-pub fn naive_days(series: &Series) -> (Vec<naive::Day>, Vec<bool>) {
+pub fn naive_days(series: &Series, snow: &SnowParams) -> (Vec<naive::Day>, Vec<bool>) {
     let mut starts_bare = vec![false; series.mean_c.len()];
     for year in &series.years {
-        starts_bare[year.start] = !year.follows;
+        starts_bare[year.start] = !year.follows || snow.options.start_bare_each_year;
     }
     let days = (0..series.mean_c.len()).map(|day| naive::Day {
         tmin_c: series.mean_c[day] - series.half_range_c[day],
@@ -293,7 +299,7 @@ pub fn naive_days(series: &Series) -> (Vec<naive::Day>, Vec<bool>) {
         precipitation_mm: series.precipitation_mm[day],
         month: usize::from(series.month[day]) + 1,
         day_of_year: f64::from(series.day_of_year[day]),
-        relative_humidity_pct: 100.0,
+        relative_humidity_pct: series.relative_humidity_pct[day],
     });
     (days.collect(), starts_bare)
 }
