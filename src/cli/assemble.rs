@@ -1,6 +1,7 @@
 //! From a scenario's path to everything a command needs, or all faults of the scenario and its data in one go.
 
 use super::arguments::Shared;
+use super::clashes::clashes;
 use super::failure::Failure;
 use super::input::{InputFile, ScenarioFile, missing_file, read_data, read_scenario};
 use crate::baseline::{
@@ -77,6 +78,10 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 precipitation: scenario.basin.precipitation,
             };
             let mut weather = record.series.clone();
+            let clashes = clashes(&scenario, &weather);
+            if !clashes.is_empty() {
+                return Err(Failure::input(&clashes, &file.name, &file.text, shared.is_coloured()));
+            }
             let phase = StationPhase::of(&scenario.snow, scenario.weather.station_elevation_m);
             correct_catch(&mut weather, scenario.weather.gauge_multiplier, phase);
             let survey = scenario.season.survey_dates[0];

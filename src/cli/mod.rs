@@ -4,6 +4,7 @@ mod arguments;
 mod assemble;
 mod break_even;
 mod check;
+mod clashes;
 mod daily;
 mod failure;
 mod generator_sheet;

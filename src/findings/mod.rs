@@ -13,6 +13,7 @@ mod generator_sheet;
 mod measure;
 mod normal;
 mod odds;
+mod perennial;
 mod precipitation;
 mod quantile;
 mod record;
@@ -43,6 +44,7 @@ pub use normal::{
     CLASS_LIMITS_PCT, LevelPercents, MedianSwe, NormalQuestions, PercentOfMedian, UNSTABLE_BELOW_SHARE,
     percent_of_median,
 };
+pub use perennial::PerennialBand;
 pub use precipitation::{RecordPrecipitation, YearPrecipitation};
 pub use quantile::{quantile, sorted};
 pub use record::{OwnYear, RecordFindings, RecordQuestions};

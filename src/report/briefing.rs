@@ -7,6 +7,7 @@ mod generator_sheet;
 mod levels;
 mod normal;
 mod observed;
+mod perennial;
 mod record;
 mod snow;
 mod sources;
@@ -74,6 +75,7 @@ pub fn briefing_html(
                     (snow::section(study, answer))
                     (snow::timing(study, &figures))
                     (elevation::section(study, &figures))
+                    (perennial::paragraph(study))
                     (volumes::section(study, &figures))
                     (yardsticks::section(study, answer))
                     (record::section(study, &figures))
@@ -81,7 +83,7 @@ pub fn briefing_html(
                     (normal::section(study))
                     (observed::section(study, of_sites))
                     (assumed::section(study))
-                    (list_section("Cautions", &cautions::cautions(study.reader, study.warming)))
+                    (list_section("Cautions", &cautions::cautions(study.reader, study.warming, &study.snow.options)))
                     h2 { "Terms" }
                     dl { @for (term, meaning) in terms::terms(study.reader) { dt { (term) } dd { (meaning) } } }
                     (sources::section())

@@ -3,14 +3,26 @@
 use super::numbers::fixed;
 use super::reader::Reader;
 use crate::perturb::Warming;
+use crate::snow::SnowOptions;
 
 /// Cautions in a reader's units, in order of weight.
-pub(super) fn cautions(reader: Reader, warming: &Warming) -> [String; 9] {
+pub(super) fn cautions(reader: Reader, warming: &Warming, options: &SnowOptions) -> [String; 9] {
     let unit = reader.units.temperature();
     let [low, high] = [1.0, 3.0].map(|c| fixed(unit.of(c), 0));
-    let humidity = format!(
-        "Rain and snow are told apart by air temperature; humidity matters between about {low} and {high} {}.",
-        unit.word
+    let humidity = if options.wet_bulb {
+        "Rain and snow are told apart by the wet bulb at the station's relative humidity, the same in every band and at every \
+         level; how humidity changes with elevation and warming is left out."
+            .to_owned()
+    } else {
+        format!(
+            "Rain and snow are told apart by air temperature; humidity matters between about {low} and {high} {}.",
+            unit.word
+        )
+    };
+    let sublimation = if options.sublimation.is_some() { "" } else { "sublimation, " };
+    let not_represented = format!(
+        "Not represented: wind drift, forest interception, {sublimation}fire, dust, glaciers, soil, groundwater, evaporation. \
+         Snowpack outflow and water input are water leaving the snow and reaching the ground, not streamflow."
     );
     let claim = format!(
         "'In this model, {} makes' is what these numbers say; never that warming caused what a year brought.",
@@ -44,8 +56,7 @@ pub(super) fn cautions(reader: Reader, warming: &Warming) -> [String; 9] {
      and factors change with cloud, albedo and season; no direction of the error is claimed.",
     &added,
     &humidity,
-    "Not represented: wind drift, forest interception, sublimation, fire, dust, glaciers, soil, groundwater, \
-     evaporation. Snowpack outflow and water input are water leaving the snow and reaching the ground, not streamflow.",
+    &not_represented,
     "Resampled years cannot hold a drought longer, or a storm larger, than the record's years can be put together to.",
     &claim,
 ]

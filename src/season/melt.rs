@@ -9,6 +9,9 @@ const MELT_SHARES: [f64; 3] = [0.1, 0.5, 0.9];
 /// Dates of the family, which stand before its shares.
 const DATES: usize = MELT_SHARES.len() + 3;
 
+/// Name of the day on which the snow is gone.
+pub const MELT_OUT_DAY: &str = "melt_out_day";
+
 pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
     let date = |name: &str, title: &str| Measure::new(Kind::DayOfWaterYear, name, title);
     let dates: [Measure; DATES] = [
@@ -16,7 +19,7 @@ pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
         date("melt_d50_day", "day with half of the net melt done"),
         date("melt_d90_day", "day with 90 % of the net melt done"),
         date("half_gone_day", "half-gone day"),
-        date("melt_out_day", "melt-out"),
+        date(MELT_OUT_DAY, "melt-out"),
         date("last_snow_day", "last day with snow").of_basin(),
     ];
     let shares = settings.melt_shares_before.iter().map(|day| {

@@ -25,7 +25,7 @@ pub use crate::snow::BARE_MM;
 pub use cover::{SEASONAL_COVER_DAYS, is_seasonal, longest_cover_days};
 pub use kind::{Kind, LEAST_REFERENCE_MM};
 pub use measure::{Measure, NONE, NOT_GONE, NOT_REACHED, Outcome, Place};
-pub use melt::keeps_snow;
+pub use melt::{MELT_OUT_DAY, keeps_snow};
 pub use period::period_value;
 
 use crate::calendar::{MonthDay, WaterYearStart};

@@ -60,8 +60,8 @@ pub struct Sublimation {
 }
 
 impl Radiation {
-    /// What holds where none is stated, with the factor that it brings along.
-    pub const FACTOR_MM_PER_C_DAY: f64 = 3.0;
+    /// What holds where none is stated.
+    pub const FACTOR_MM_PER_C_DAY: f64 = 2.5;
 }
 
 impl Patchiness {
@@ -73,7 +73,7 @@ impl Patchiness {
 
 impl ColdContent {
     /// The share that holds where none is stated.
-    pub const DAILY_SHARE: f64 = 0.1;
+    pub const DAILY_SHARE: f64 = 0.3;
 }
 
 impl SnowOptions {
@@ -94,7 +94,7 @@ impl SnowOptions {
             within(faults, key, coefficient_of_variation, 0.0..=3.0, "", mend);
         }
         if let Some(ColdContent { daily_share }) = self.cold_content {
-            let mend = "0.1 lets the pack follow the air within some ten days";
+            let mend = "0.3 lets the pack follow the air within some three days";
             within(faults, "snow.cold_content.daily_share", daily_share, 0.0..=1.0, "", mend);
         }
         if let Some(Sublimation { mm_per_day, snowfall_fraction }) = self.sublimation {

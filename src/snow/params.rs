@@ -6,8 +6,11 @@ use crate::calendar::MonthDay;
 use crate::fault::{Fault, Unlikely, within};
 use serde::Serialize;
 
-/// Degree-day factor of the whole year where radiation brings the season, mm per degC and day.
-const FACTOR_WITH_RADIATION: f64 = 0.5;
+/// Degree-day factor of the whole year where radiation brings the season, mm per degC and day. This, the factor of radiation,
+/// the melt bases and the refreezing beside them were searched over eight mountain stations, on level ground.
+const FACTOR_WITH_RADIATION: f64 = 0.25;
+/// Refreezing of so small a factor.
+const REFREEZE_WITH_RADIATION: f64 = 0.5;
 /// Refreezing where a cold store freezes what it must: common practice.
 const REFREEZE_WITH_COLD_CONTENT: f64 = 0.05;
 
@@ -98,6 +101,11 @@ impl SnowParams {
         if options.radiation.is_some() {
             snow.degree_day_factor_lowest = FACTOR_WITH_RADIATION;
             snow.degree_day_factor_highest = FACTOR_WITH_RADIATION;
+            snow.refreeze_fraction = REFREEZE_WITH_RADIATION;
+            snow.melt_base_c = match rule {
+                DegreeRule::Diurnal => 2.0,
+                DegreeRule::Mean => 0.5,
+            };
         }
         if options.wet_bulb {
             snow.rain_snow = PhaseRule::LINEAR_WET_BULB;
@@ -196,6 +204,7 @@ impl SnowParams {
             ));
         }
         found.extend(self.rain_snow.unlikely());
+        let most_refreezing = if self.options.radiation.is_some() { 0.60 } else { 0.30 };
         let usual = [
             ("snow.melt_base_c", self.melt_base_c, -1.0..=2.0, "-1 to 2 degC (common practice)"),
             (
@@ -207,8 +216,9 @@ impl SnowParams {
             (
                 "snow.refreeze_fraction",
                 self.refreeze_fraction,
-                0.0..=0.30,
-                "up to 0.30: 0.05 is common practice, the defaults reach 0.20 in place of cold content",
+                0.0..=most_refreezing,
+                "up to 0.30: 0.05 is common practice, the defaults reach 0.20 in place of cold content, and 0.50 of the \
+                 small factor beside radiation",
             ),
         ];
         for (key, value, range, why) in usual {

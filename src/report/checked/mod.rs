@@ -9,6 +9,7 @@ mod record;
 
 use super::numbers::{counted, fixed, signed};
 use super::reader::Reader;
+use super::snow_words;
 use crate::baseline::{Baseline, BaselineYears, Detrended, Seasons};
 use crate::basin::{Basin, BeyondStations};
 use crate::ensemble::BandClimate;
@@ -137,6 +138,10 @@ impl Checked<'_> {
         self.write_levels(&mut page);
         page.head("Snow model");
         page.line("fitted", "no: its parameters are not fitted to observed snow");
+        page.line("rain or snow", snow_words::rain_or_snow(self.reader, self.snow));
+        for (name, what) in snow_words::options(self.reader, self.snow) {
+            page.line(&name.to_lowercase(), what);
+        }
         page.head(&format!("Defaults in force: {}", self.defaults.len()));
         for (key, value) in &self.defaults {
             page.paragraph(&format!("{key} = {value}"));
