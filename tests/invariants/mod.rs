@@ -6,6 +6,7 @@ mod ensemble;
 mod findings;
 mod mass;
 mod options;
+mod patches;
 mod realizations;
 mod same_bits;
 mod scenario;

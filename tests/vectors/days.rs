@@ -6,7 +6,8 @@ use thawline::basin::{Basin, GradientForm, Ground, PrecipitationGradient, Temper
 use thawline::calendar::MonthDay;
 use thawline::perturb::{MonthlyChange, Warming};
 use thawline::snow::{
-    DegreeRule, Detail, Engine, LaneSpec, Lanes, PhaseRule, SnowOptions, SnowParams, YearBlock, mean_degrees,
+    ColdContent, DegreeRule, Detail, Engine, LaneSpec, Lanes, PhaseRule, Radiation, SnowOptions, SnowParams,
+    YearBlock, mean_degrees,
 };
 use thawline::weather::{Series, YearSpan};
 
@@ -28,8 +29,43 @@ pub fn plain_snow(case: &Case) -> SnowParams {
         melt_base_c: case.input_or_none("melt_base_c").unwrap_or(0.0),
         liquid_holding_fraction: case.input_or_none("liquid_holding_fraction").unwrap_or(0.0),
         refreeze_fraction: case.input_or_none("refreeze_fraction").unwrap_or(0.0),
-        options: SnowOptions::default(),
+        options: SnowOptions {
+            cold_content: case.input_or_none("cold_share").map(|daily_share| ColdContent { daily_share }),
+            radiation: case
+                .input_or_none("radiation_factor")
+                .map(|factor_mm_per_c_day| Radiation { factor_mm_per_c_day }),
+            ..SnowOptions::default()
+        },
     }
+}
+
+/// Level and open ground unless a case states otherwise.
+fn ground(case: &Case) -> Ground {
+    Ground {
+        slope_deg: case.input_or_none("slope_deg").unwrap_or(0.0),
+        aspect_deg: case.input_or_none("aspect_deg").unwrap_or(0.0),
+        canopy_fraction: case.input_or_none("canopy_fraction").unwrap_or(0.0),
+        accumulation_variation: None,
+    }
+}
+
+/// What a degree melts on stated days of the year, by the ground.
+pub fn melt_factors(case: &Case) {
+    let (mut basin, snow) = (flat_basin(), plain_snow(case));
+    basin.latitude_deg = case.input("latitude_deg");
+    let spec = LaneSpec {
+        basin: &basin,
+        station_m: 0.0,
+        elevation_m: 0.0,
+        ground: ground(case),
+        change: &MonthlyChange::NONE,
+        warming_factor: 1.0,
+        snow: &snow,
+        share: 1.0,
+    };
+    let lanes = Lanes::new(&[vec![spec]]);
+    let days: Vec<u16> = case.input("day_of_year");
+    case.check("melt_factor", &days.iter().map(|day| lanes.melt_factors(*day)[0]).collect::<Vec<f64>>());
 }
 
 /// One water year that starts on 1 October 2006: first a day at -40 degC that brings `pack_mm` of snow, then the stated
@@ -82,7 +118,7 @@ fn run_one_band(case: &Case, change: &MonthlyChange) -> YearBlock {
         basin: &basin,
         station_m: 0.0,
         elevation_m: 0.0,
-        ground: Ground::default(),
+        ground: ground(case),
         change,
         warming_factor: 1.0,
         snow: &snow,
@@ -115,6 +151,9 @@ pub fn days(case: &Case) {
     case.check("melt_mm", &of_detail(|detail| &detail.melt_mm));
     case.check("refreeze_mm", &of_detail(|detail| &detail.refreeze_mm));
     case.check("liquid_mm", &of_detail(|detail| &detail.liquid_mm));
+    if case.input_or_none::<f64>("cold_share").is_some() {
+        case.check("cold_content_mm", &of_detail(|detail| &detail.cold_mm));
+    }
     case.check("snow_mm", &snow_mm);
     case.check("rain_mm", &rain_mm);
     case.check("pack_at_end_mm", &ice_mm[ice_mm.len() - 1..]);

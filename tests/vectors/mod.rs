@@ -23,8 +23,9 @@ use case::Case;
 /// What a case is run through.
 type Runner = fn(&Case);
 
-const RUNNERS: [(&str, Runner); 33] = [
+const RUNNERS: [(&str, Runner); 34] = [
     ("days", days::days),
+    ("melt factors", days::melt_factors),
     ("precipitation factor", days::precipitation_factor),
     ("temperature shift", days::temperature_shift),
     ("melt over bands", bands::melt_over_bands),
@@ -92,6 +93,12 @@ fn air_and_phase() {
 #[test]
 fn published_ranges() {
     run(include_str!("ranges.toml"));
+}
+
+/// Cold packs, slopes and trees, through the engine.
+#[test]
+fn snow_options() {
+    run(include_str!("options.toml"));
 }
 
 /// Seasons that can be solved in closed form: one place, and a basin of bands.
