@@ -73,6 +73,35 @@ impl DepthUnit {
     }
 }
 
+/// How a share of something is written.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
+pub enum ShareUnit {
+    /// From 0 to 1.
+    #[serde(rename = "fraction")]
+    Fraction,
+    /// From 0 to 100.
+    #[serde(rename = "pct")]
+    Percent,
+}
+
+impl ShareUnit {
+    /// Both by the name a scenario gives them.
+    pub const NAMES: [(&'static str, Self); 2] = [("fraction", Self::Fraction), ("pct", Self::Percent)];
+
+    /// How the whole is written.
+    pub fn of_all(self) -> f64 {
+        match self {
+            Self::Fraction => 1.0,
+            Self::Percent => 100.0,
+        }
+    }
+
+    /// A share in this unit, from 0 to 1.
+    pub fn to_fraction(self, value: f64) -> f64 {
+        value / self.of_all()
+    }
+}
+
 /// Unit of a length: an elevation, or a depth of water where it is large.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
 pub enum LengthUnit {

@@ -49,6 +49,18 @@ impl<U: Copy> Column<U> {
         }
     }
 
+    /// The same of a column that may be left out: none where it is neither stated nor there by its word and unit.
+    ///
+    /// # Errors
+    /// A stated column that is not there, or several.
+    pub(super) fn find_if_there(
+        &self,
+        table: &Table<'_>,
+        units: &[(&'static str, U)],
+    ) -> Result<Option<(usize, U)>, Fault> {
+        self.is_there(table, units).then(|| self.find(table, units, "")).transpose()
+    }
+
     /// How a scenario names a column that the table does not have by its word and unit; none where it has it.
     pub(super) fn naming(&self, table: &Table<'_>, units: &[(&'static str, U)]) -> Option<String> {
         let Self::WithUnit(word) = self else { return None };

@@ -5,14 +5,18 @@ mod columns;
 mod curve;
 mod gradients;
 mod ground;
+mod ground_columns;
 mod reach;
+mod told_apart;
 
 pub use bands::{Band, BandColumns, read_bands};
 pub use columns::Column;
 pub use curve::{CurveColumns, read_curve};
 pub use gradients::{GradientForm, PrecipitationGradient, TemperatureGradient};
-pub use ground::Ground;
+pub use ground::{Ground, GroundStated};
+pub use ground_columns::{ANGLE_NAMES, GroundColumns, VARIATION_NAMES};
 pub use reach::BeyondStations;
+pub use told_apart::told_apart;
 
 use crate::fault::Unlikely;
 
@@ -104,6 +108,7 @@ impl Basin {
                 ),
             ));
         }
+        found.extend(self.too_steep());
         let ratio = self.precipitation_ratio(station_elevation_m);
         if !USUAL_PRECIPITATION_RATIO.contains(&ratio) {
             found.push(Unlikely::new(

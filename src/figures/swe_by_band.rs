@@ -1,12 +1,14 @@
 //! Snow water by elevation at each level, with the area of each band beside it.
 
-mod labels;
+mod ground;
+mod level_names;
 mod profile;
 mod rows;
 mod title;
 mod words;
 
 use super::axes::AmountTicks;
+use super::labels;
 use super::marks::{Form, Marking};
 use super::page::Paragraphs;
 use super::scales;
@@ -14,9 +16,11 @@ use super::sheet::{Drawn, HPos, Plot, Sheet, VPos};
 use super::shown::{Shown, name};
 use super::theme::{EDGE, MARGIN_PX, NAME, NOTE, WIDTH_PX, level_ink};
 use super::{Figure, Part, Setting, Svg};
-use crate::basin::Band;
+use crate::basin::{Band, told_apart};
 use crate::findings::{Findings, LevelFindings, MeasureFindings};
-use labels::Labels;
+use crate::units::UnitSystem;
+use ground::GroundColumns;
+use level_names::LevelNames;
 use profile::Profile;
 use rows::Rows;
 use words::Words;
@@ -30,6 +34,9 @@ pub(super) const FIGURE: Figure = Figure {
 };
 
 const STEPS: usize = 6;
+/// A narrower plot has room for fewer steps.
+const NARROW_PX: f64 = 280.0;
+const STEPS_OF_NARROW: usize = 4;
 const AREA_STEPS: usize = 3;
 /// Width of the bars' panel, px.
 const AREA_PX: f64 = 124.0;
@@ -43,17 +50,30 @@ const AXIS_PX: f64 = 64.0;
 #[derive(Debug, Clone, Copy)]
 struct Found<'a> {
     band: &'a Band,
+    /// What tells it from other bands of the same range.
+    apart: Option<&'a str>,
     measure: &'a MeasureFindings,
 }
 
 impl<'a> Found<'a> {
     /// Of every band, from the lowest; nothing where one lacks the measure.
-    fn all(findings: &'a Findings, headline: &MeasureFindings) -> Option<Vec<Self>> {
-        let bands = findings.bands.iter().map(|of_band| {
+    fn all(
+        findings: &'a Findings,
+        headline: &MeasureFindings,
+        apart: &'a [Option<String>],
+    ) -> Option<Vec<Self>> {
+        let bands = findings.bands.iter().zip(apart).map(|(of_band, apart)| {
             let same = |found: &&MeasureFindings| found.measure.name == headline.measure.name;
-            Some(Self { band: &of_band.band, measure: of_band.measures.iter().find(same)? })
+            let measure = of_band.measures.iter().find(same)?;
+            Some(Self { band: &of_band.band, apart: apart.as_deref(), measure })
         });
         bands.collect::<Option<Vec<Self>>>().filter(|bands| !bands.is_empty())
+    }
+
+    /// `2 400–2 600 m, facing 180°, slope 25°`.
+    fn name(&self, units: UnitSystem) -> String {
+        let apart = self.apart.map_or_else(String::new, |ground| format!(", {ground}"));
+        format!("{}{apart}", labels::band(units, self.band))
     }
 
     fn at(&self, level: usize) -> Option<&'a LevelFindings> {
@@ -69,7 +89,8 @@ impl<'a> Found<'a> {
 
 fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let headline = findings.basin.first()?;
-    let bands = Found::all(findings, headline)?;
+    let apart = told_apart(findings.bands.iter().map(|of_band| &of_band.band));
+    let bands = Found::all(findings, headline, &apart)?;
     let shown = Shown::of(findings);
     let words = Words::of(findings, headline, &bands, &shown, setting.units);
     let text = paint(findings, &bands, &shown, setting, &words).ok()?;
@@ -90,7 +111,9 @@ fn paint(
     let names = MARGIN_PX + heading.height() + 26.0;
     let rows = Rows::of(bands, names + LEVELS_PX);
     let (top, bottom) = (rows.top, rows.bottom);
-    let left = MARGIN_PX + rows.edges_width(units) + 14.0;
+    let ground = GroundColumns::of(bands);
+    let edges_left = MARGIN_PX + ground.width();
+    let left = edges_left + rows.edges_width(units) + 14.0;
     let area_left = WIDTH_PX - MARGIN_PX - AREA_PX;
     let changes_right = area_left - GAP_PX;
     let right = match words.changes_width() {
@@ -103,22 +126,24 @@ fn paint(
     let highest =
         highest.chain(bands.iter().filter_map(|found| Some(found.range_mm(findings.reference)?[2])));
     let depth = units.depth();
-    let ticks = AmountTicks::up_to(depth.of(highest.fold(0.0, f64::max)), STEPS);
+    let steps = if right - left < NARROW_PX { STEPS_OF_NARROW } else { STEPS };
+    let ticks = AmountTicks::up_to(depth.of(highest.fold(0.0, f64::max)), steps);
     let sheet = Sheet::new(bottom + AXIS_PX + key.height() + MARGIN_PX)?;
     let plot = sheet.plot((left, top), (right, bottom), 0.0..ticks.top(), 0.0..1.0)?;
 
     heading.write(&sheet, MARGIN_PX)?;
-    sheet.write(&words.elevation, (MARGIN_PX, names), NAME, HPos::Left, VPos::Bottom)?;
+    sheet.write(&words.elevation, (edges_left, names), NAME, HPos::Left, VPos::Bottom)?;
     let profile = Profile { plot: &plot, rows: &rows, bands, depth };
     if findings.realizations > 1 {
         sheet.group("reference-band", || profile.range(&sheet, findings.reference))?;
     }
     sheet.group("axis", || {
         rows.axis(&sheet, left, units)?;
+        ground.write(&sheet, MARGIN_PX, names, &rows)?;
         scales::rightwards(&sheet, &plot, &ticks, bottom)?;
         sheet.write(&words.axis, (left, bottom + 44.0), NAME, HPos::Left, VPos::Bottom)
     })?;
-    let mut labels = Labels::new([MARGIN_PX, changes_right]);
+    let mut level_names = LevelNames::new([MARGIN_PX, changes_right]);
     for at in drawn {
         let place = shown.others.iter().position(|other| *other == at);
         let marking = Marking {
@@ -127,9 +152,9 @@ fn paint(
             is_hollow: place.is_none(),
         };
         sheet.group("level", || profile.line(&sheet, at, marking))?;
-        labels.add(profile.upper_end(at), name(findings, at, units), marking.ink);
+        level_names.add(profile.upper_end(at), name(findings, at, units), marking.ink);
     }
-    sheet.group("levels", || labels.write(&sheet, top))?;
+    sheet.group("levels", || level_names.write(&sheet, top))?;
     sheet.group("changes", || {
         sheet.write(&words.changes_name, (changes_right, names), NAME, HPos::Right, VPos::Bottom)?;
         let labelled = rows.labelled().into_iter();
@@ -151,8 +176,8 @@ fn areas(sheet: &Sheet, bands: &[Found<'_>], rows: &Rows, left: f64, setting: &S
     let ticks = AmountTicks::up_to(largest, AREA_STEPS);
     let right = WIDTH_PX - MARGIN_PX;
     let plot: Plot = sheet.plot((left, rows.top), (right, rows.bottom), 0.0..ticks.top(), 0.0..1.0)?;
-    for found in bands {
-        let [low, high] = [found.band.lower_m, found.band.upper_m].map(|edge_m| rows.height(edge_m));
+    for (at, found) in bands.iter().enumerate() {
+        let [low, high] = rows.edges_of(at);
         let end = plot.at(area.of(found.band.area_km2), 0.0).0;
         sheet.block((left, high + rows.gap()), (end, low - rows.gap()), EDGE)?;
     }

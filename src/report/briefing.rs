@@ -19,6 +19,7 @@ use super::generator_sheet::snow_mismatch;
 use super::numbers::counted;
 use super::study::Study;
 use super::{cautions, terms};
+use crate::basin::Basin;
 use crate::figures::{Part, Svg};
 use maud::{DOCTYPE, Markup, PreEscaped, html};
 use sha2::{Digest, Sha256};
@@ -51,7 +52,7 @@ pub fn briefing_html(
                 main {
                     p.over {
                         (counted(findings.realizations, "realization")) " of " (counted(findings.years, "water year")) " under "
-                        (counted(findings.levels_c.len(), "warming level")) ", " (counted(study.basin.bands.len(), "elevation band"))
+                        (counted(findings.levels_c.len(), "warming level")) ", " (bands_in_words(study.basin))
                     }
                     h1 { (study.title) }
                     p.notice {
@@ -147,5 +148,15 @@ mod tests {
         assert_eq!(super::base64(b"foobar"), "Zm9vYmFy");
         assert_eq!(super::base64(b"fooba"), "Zm9vYmE=");
         assert_eq!(super::base64(b"foob"), "Zm9vYg==");
+    }
+}
+
+/// `10 elevation bands`; where several share a range, `14 bands in 10 ranges of elevation`.
+fn bands_in_words(basin: &Basin) -> String {
+    match (basin.bands.len(), basin.ranges()) {
+        (bands, ranges) if ranges < bands => {
+            format!("{} in {} of elevation", counted(bands, "band"), counted(ranges, "range"))
+        }
+        (bands, _) => counted(bands, "elevation band"),
     }
 }

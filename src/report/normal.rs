@@ -2,7 +2,7 @@
 
 use super::numbers::counted;
 use super::study::Study;
-use super::tables::{ReportFile, finish, optional, write, yes_or_no};
+use super::tables::{GroundColumns, ReportFile, finish, optional, write, yes_or_no};
 use crate::baseline::{BaselineChoice, BaselineYears, ENOUGH_BASELINE_YEARS, USUAL_BASELINE};
 use crate::findings::{MedianSwe, RecordFindings};
 use csv::Writer;
@@ -83,19 +83,23 @@ fn medians(study: &Study<'_>, record: &RecordFindings) -> Vec<u8> {
     let units = study.reader.units;
     let (depth, elevation, area) = (units.depth(), units.elevation(), units.area());
     let mut writer = Writer::from_writer(Vec::new());
-    let header = [
+    let bands = &study.basin.bands;
+    let ground = GroundColumns::of(bands);
+    let mut header = vec![
         "survey".to_owned(),
         "band".to_owned(),
         format!("lower_{}", elevation.suffix),
         format!("upper_{}", elevation.suffix),
         format!("area_{}", area.suffix),
+    ];
+    header.extend(ground.names());
+    header.extend([
         format!("median_{}", depth.suffix),
         format!("highest_median_of_year_{}", depth.suffix),
         "percent_of_highest".to_owned(),
         "flag".to_owned(),
-    ];
+    ]);
     write(&mut writer, &header);
-    let bands = &study.basin.bands;
     for on in &record.percent_of_median {
         let of_bands = bands.iter().zip(&on.bands).enumerate().map(|(number, (band, median))| {
             (
@@ -105,18 +109,20 @@ fn medians(study: &Study<'_>, record: &RecordFindings) -> Vec<u8> {
                     elevation.of(band.upper_m).to_string(),
                 ],
                 band.area_km2,
+                Some(band),
                 median,
             )
         });
         let edges =
             bands.first().zip(bands.last()).map_or([0.0; 2], |(low, high)| [low.lower_m, high.upper_m]);
         let [low, high] = edges.map(|edge_m| elevation.of(edge_m).to_string());
-        let of_basin = (["basin".to_owned(), low, high], study.basin.area_km2(), &on.basin);
-        for (place, area_km2, median) in of_bands.chain([of_basin]) {
+        let of_basin = (["basin".to_owned(), low, high], study.basin.area_km2(), None, &on.basin);
+        for (place, area_km2, band, median) in of_bands.chain([of_basin]) {
             let highest = median.highest_median_mm;
             let mut row = vec![on.survey.to_string()];
             row.extend(place);
             row.push(area.of(area_km2).to_string());
+            row.extend(ground.cells(band));
             row.extend([median.median_mm, highest].map(|mm| depth.of(mm).to_string()));
             row.push(optional((highest > 0.0).then(|| 100.0 * median.median_mm / highest)));
             row.push(flag(median));

@@ -6,6 +6,7 @@ mod break_even;
 mod cells;
 mod driest_and_wettest;
 mod generator_sheet;
+mod ground;
 mod measures;
 mod record_range;
 mod record_years;
@@ -14,6 +15,7 @@ mod volumes;
 mod yardsticks;
 
 pub(super) use cells::{finish, optional, write, yes_or_no};
+pub(super) use ground::GroundColumns;
 
 use super::normal::normal_tables;
 use super::observed::observed_tables;

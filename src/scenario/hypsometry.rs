@@ -3,10 +3,13 @@
 use super::elevation::Height;
 use super::format::read_layout;
 use super::section::Section;
-use crate::basin::{Band, BandColumns, Column, CurveColumns, read_bands, read_curve};
+use crate::basin::{
+    ANGLE_NAMES, Band, BandColumns, Column, CurveColumns, GroundColumns, VARIATION_NAMES, read_bands,
+    read_curve,
+};
 use crate::fault::Fault;
 use crate::table::Encoding;
-use crate::units::{AreaUnit, LengthUnit};
+use crate::units::{AreaUnit, LengthUnit, ShareUnit};
 
 /// A file of bands or of a curve.
 #[derive(Debug, Clone)]
@@ -93,10 +96,26 @@ fn read_bands_table(mut section: Section<'_>) -> Option<HypsometryTyped> {
     let upper = column(&mut section, "upper", &LengthUnit::NAMES);
     let area = column(&mut section, "area", &AreaUnit::NAMES);
     let mean = column(&mut section, "mean", &LengthUnit::NAMES);
+    let ground = read_ground(&mut section);
     let format = read_layout(&mut section);
     section.finish();
-    let columns = BandColumns { lower: lower?, upper: upper?, area: area?, mean: mean?, format: format? };
+    let columns = BandColumns {
+        lower: lower?,
+        upper: upper?,
+        area: area?,
+        mean: mean?,
+        ground: ground?,
+        format: format?,
+    };
     Some(HypsometryTyped { file: file?, key, form: Form::Bands(columns) })
+}
+
+fn read_ground(section: &mut Section<'_>) -> Option<GroundColumns> {
+    let slope = column(section, "slope", &ANGLE_NAMES);
+    let aspect = column(section, "aspect", &ANGLE_NAMES);
+    let canopy = column(section, "canopy", &ShareUnit::NAMES);
+    let accumulation = column(section, "accumulation", &VARIATION_NAMES);
+    Some(GroundColumns { slope: slope?, aspect: aspect?, canopy: canopy?, accumulation: accumulation? })
 }
 
 fn read_curve_table(mut section: Section<'_>) -> Option<HypsometryTyped> {
@@ -117,7 +136,8 @@ fn read_curve_table(mut section: Section<'_>) -> Option<HypsometryTyped> {
     Some(HypsometryTyped { file: file?, key, form: Form::Curve(columns) })
 }
 
-/// `{ column, unit }`, or where that is not typed a column called by the key and its unit.
+/// `{ column, unit }`, of which a unit that is the only one may be left out; or where that is not typed a column called by
+/// the key and its unit.
 fn column<U: Copy>(
     section: &mut Section<'_>,
     key: &'static str,
@@ -129,7 +149,13 @@ fn column<U: Copy>(
     }
     let mut inner = section.section(key);
     let column = inner.required_text("column", "the column's name in the header", "add column = \"...\"");
-    let unit = inner.required_choice("unit", units);
+    let unit = match units {
+        [(_, only)] if !inner.has("unit") => {
+            inner.knows("unit");
+            Some(*only)
+        }
+        _ => inner.required_choice("unit", units),
+    };
     inner.finish();
     Some(Column::Stated { column: column?, unit: unit? })
 }

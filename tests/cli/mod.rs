@@ -8,6 +8,7 @@ mod data_faults;
 mod drawn_weather;
 mod generator_sheet;
 mod gradients;
+mod ground;
 mod identities;
 mod intensity;
 mod interrupt;

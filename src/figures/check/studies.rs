@@ -22,6 +22,8 @@ pub struct Study<'a> {
     pub undefined: [usize; 2],
     /// Edges of the bands, m.
     pub edges_m: &'a [f64],
+    /// Bands between two edges, which face other ways.
+    pub parts: usize,
     /// What the highest band gains a degree beside what it loses, mm.
     pub highest_gains_mm: f64,
     /// Whether volumes are asked for.
@@ -52,6 +54,7 @@ pub const PLAIN: Study<'static> = Study {
     dates: [220.0, 9.0, -6.0],
     undefined: [0, 0],
     edges_m: &[2000.0, 2300.0, 2600.0, 2900.0],
+    parts: 1,
     highest_gains_mm: 0.0,
     has_window: true,
     peak_day: 180.0,
@@ -94,7 +97,7 @@ impl Study<'_> {
             }
         };
         // Amounts grow with elevation: in three bands 40, 100 and 160 % of the basin's.
-        let bands_count = self.edges_m.len() - 1;
+        let bands_count = (self.edges_m.len() - 1) * self.parts;
         let height = |band: usize| (band as f64 + 0.5) / bands_count as f64;
         let in_band = |level: usize, band: usize, measure: usize, realization: usize| {
             let of_basin = value(level, measure, realization);
@@ -123,14 +126,15 @@ impl Study<'_> {
         };
         let bands: Vec<Band> = (0..bands_count)
             .map(|band| {
-                let (lower_m, upper_m) = (self.edges_m[band], self.edges_m[band + 1]);
+                let range = band / self.parts;
+                let (lower_m, upper_m) = (self.edges_m[range], self.edges_m[range + 1]);
                 let elevation_m = (lower_m + upper_m) / 2.0;
                 Band {
                     lower_m,
                     upper_m,
                     area_km2: 60.0 - 45.0 * height(band),
                     elevation_m,
-                    ground: Ground::default(),
+                    ground: self.ground(band % self.parts),
                 }
             })
             .collect();
@@ -145,6 +149,20 @@ impl Study<'_> {
         let record = super::records::PLAIN.findings(self.levels_c, self.reference);
         let generator = Some(super::weathers::PLAIN_SHEET.clone());
         Findings { years: 30, record: Some(record), generator, ..answer(&runs, &questions, &Silent).unwrap() }
+    }
+
+    /// Of a part of a range.
+    fn ground(&self, part: usize) -> Ground {
+        if self.parts == 1 {
+            return Ground::default();
+        }
+        let of_all = part as f64 / self.parts as f64;
+        Ground {
+            slope_deg: 45.0 * of_all,
+            aspect_deg: 360.0 * of_all,
+            canopy_fraction: of_all,
+            accumulation_variation: (part > 0).then_some(of_all),
+        }
     }
 
     /// SWE that rises to what the amounts say and falls again, a few years of it.
@@ -207,6 +225,10 @@ pub fn studies() -> Vec<(&'static str, Study<'static>)> {
         ("one band", Study { edges_m: &[1800.0, 3300.0], ..PLAIN }),
         ("thirty bands", Study { edges_m: &THIRTY, ..PLAIN }),
         ("uneven bands", Study { edges_m: &[-30.0, 10.0, 1500.0, 1510.0, 1520.0, 1700.0], ..PLAIN }),
+        ("bands of one range", Study { parts: 2, ..PLAIN }),
+        ("one range", Study { edges_m: &[1800.0, 3300.0], parts: 4, ..PLAIN }),
+        ("ninety bands of thirty ranges", Study { edges_m: &THIRTY, parts: 3, ..PLAIN }),
+        ("uneven ranges", Study { edges_m: &[-30.0, 10.0, 1500.0, 1510.0, 1700.0], parts: 2, ..PLAIN }),
         (
             "snow only high",
             Study { edges_m: &THIRTY, highest_gains_mm: 90.0, swe: [9.0, 8.0, -2.0], ..PLAIN },

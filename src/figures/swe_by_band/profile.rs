@@ -39,9 +39,9 @@ impl Profile<'_> {
             let medians: Vec<Px> = run.iter().map(|step| step[1]).collect();
             sheet.line(&medians, stroke)?;
         }
-        for found in self.rows.labelled().into_iter().filter_map(|at| self.bands.get(at)) {
+        for (at, found) in self.rows.labelled().into_iter().filter_map(|at| Some((at, self.bands.get(at)?))) {
             if let Some([_, median_mm, _]) = found.range_mm(level) {
-                let height = self.rows.height(found.band.elevation_m);
+                let height = self.rows.of_marker(at, found);
                 marker(sheet, (self.across(median_mm), height), marking)?;
             }
         }
@@ -60,14 +60,14 @@ impl Profile<'_> {
 
     /// Low end, median and high end at the lower and the upper edge of every band, in runs of bands that have them.
     fn steps(&self, level: usize) -> Vec<Vec<[Px; 3]>> {
-        let ranges: Vec<_> = self.bands.iter().map(|found| (found.band, found.range_mm(level))).collect();
+        let ranges: Vec<_> =
+            self.bands.iter().enumerate().map(|(at, found)| (at, found.range_mm(level))).collect();
         let runs = ranges.split(|(_, range)| range.is_none()).filter(|run| !run.is_empty());
         let steps = |run: &[_]| {
-            let step = |(band, range): &(&crate::basin::Band, Option<[f64; 3]>)| {
+            let step = |(at, range): &(usize, Option<[f64; 3]>)| {
                 let across = range.map(|range_mm| range_mm.map(|amount_mm| self.across(amount_mm)));
-                let edges = [band.lower_m, band.upper_m].map(|edge_m| self.rows.height(edge_m));
-                let at = |height: f64| across.map(|across| across.map(|x| (x, height)));
-                edges.map(at)
+                let ends = |height: f64| across.map(|across| across.map(|x| (x, height)));
+                self.rows.edges_of(*at).map(ends)
             };
             run.iter().flat_map(step).flatten().collect()
         };

@@ -1,6 +1,6 @@
 //! The finding: which elevations lose most, or that none does.
 
-use super::super::labels::{band, is_nothing, level, percent_size, sentence, size_and_unit};
+use super::super::labels::{is_nothing, level, percent_size, sentence, size_and_unit};
 use super::super::shown::Shown;
 use super::Found;
 use crate::findings::{Findings, MeasureFindings};
@@ -42,7 +42,7 @@ pub(super) fn title(
     let by_amount = |a: &&Change<'_>, b: &&Change<'_>| a.change_mm.total_cmp(&b.change_mm);
     let lowest = moved().min_by(by_amount).filter(|change| change.change_mm < 0.0);
     let highest = moved().max_by(by_amount).filter(|change| change.change_mm > 0.0);
-    let where_ = |change: &Change<'_>| band(units, change.found.band);
+    let where_ = |change: &Change<'_>| change.found.name(units);
     let how_much = |change: &Change<'_>| {
         let percent =
             change.percent.map_or_else(String::new, |percent| format!(" ({} %)", percent_size(percent)));
@@ -109,7 +109,7 @@ fn of_reference(findings: &Findings, name: &str, bands: &[Found<'_>], units: Uni
         }
         Some((found, median_mm)) => format!(
             "{name} is highest at {}, {} at the reference; no other level was run",
-            band(units, found.band),
+            found.name(units),
             size_and_unit(units, median_mm)
         ),
     }

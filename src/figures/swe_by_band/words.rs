@@ -1,13 +1,20 @@
 //! What the figure says beside its title and the levels' names.
 
 use super::super::ensemble;
-use super::super::labels::{band, grouped, level, sentence, signed, signed_percent, size_and_unit};
+use super::super::labels::{grouped, level, sentence, signed, signed_percent, size_and_unit};
 use super::super::shown::{Shown, name};
 use super::super::theme::{NAME, NOTE};
 use super::Found;
 use super::title::title;
 use crate::findings::{Findings, MeasureFindings};
 use crate::units::UnitSystem;
+
+/// What is said where bands share a range of elevation, in the key and in the caption.
+const PARTS: [&str; 2] = [
+    " Bands that share a range of elevation stand above one another within it; their ground stands at the left.",
+    " Bands that share a range of elevation stand above one another within it, each as high as the next, marked in its middle: \
+     none of them lies higher than another.",
+];
 
 /// Every text of the figure but the levels' names.
 pub(super) struct Words {
@@ -55,6 +62,8 @@ impl Words {
         let changes_of = farthest.map_or_else(String::new, |(_, level_c)| {
             format!(" Change at {}: the median of paired changes{percent}.", level(units, *level_c))
         });
+        let have_parts = bands.iter().any(|found| found.apart.is_some());
+        let [of_key, of_caption] = if have_parts { PARTS } else { [""; 2] };
         Self {
             title: title(findings, headline, bands, shown, units),
             ensemble: format!("{}.{which}", ensemble(findings)),
@@ -66,10 +75,12 @@ impl Words {
             changes: farthest.map_or_else(Vec::new, |(at, _)| {
                 bands.iter().map(|found| change(found, at, units)).collect()
             }),
-            key: format!("Line: median of each band, reference dashed. {range} Bars: each band's area."),
+            key: format!(
+                "Line: median of each band, reference dashed. {range} Bars: each band's area.{of_key}"
+            ),
             caption: format!(
                 "{measure} of each elevation band, {years}, at each warming level: the median over {}, the same over the whole \
-                 height of a band, marked at the elevation at which the band is run. {range}{which}{changes_of} Bars: the area \
+                 height of a band, marked at the elevation at which the band is run. {range}{of_caption}{which}{changes_of} Bars: the area \
                  of each band; snow water times area is volume. Where bands are too thin, some are drawn without marker and \
                  label.",
                 ensemble(findings)
@@ -113,7 +124,7 @@ fn described(findings: &Findings, bands: &[Found<'_>], shown: &Shown, units: Uni
             .collect();
         let area = units.area();
         let area = format!("{} {}", grouped(area.of(found.band.area_km2), 1), area.word);
-        format!("{}, {area}: {}.", band(units, found.band), values.join(", "))
+        format!("{}, {area}: {}.", found.name(units), values.join(", "))
     });
     of_band.collect::<Vec<_>>().join(" ")
 }

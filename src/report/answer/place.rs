@@ -3,6 +3,7 @@
 use super::super::numbers::{days_moved, signed};
 use super::super::reader::Reader;
 use super::telling_level;
+use crate::basin::{Band, told_apart};
 use crate::findings::Findings;
 
 /// How much earlier half of the melt is done, and melt-out comes, at a level.
@@ -23,12 +24,14 @@ pub(super) fn timing(findings: &Findings, at: usize, reader: Reader) -> Option<S
 /// whose reference median is below 10 mm have no percentage and are left out.
 pub(super) fn elevation(findings: &Findings, reader: Reader) -> Option<String> {
     let at = telling_level(findings)?;
-    let changes: Vec<(f64, f64, f64)> = findings
+    let apart = told_apart(findings.bands.iter().map(|of_band| &of_band.band));
+    let changes: Vec<(&Band, Option<&String>, f64)> = findings
         .bands
         .iter()
-        .filter_map(|band| {
+        .zip(&apart)
+        .filter_map(|(band, apart)| {
             let percent = band.measures.first()?.levels[at].percent_change?;
-            Some((band.band.lower_m, band.band.upper_m, percent))
+            Some((&band.band, apart.as_ref(), percent))
         })
         .collect();
     if changes.len() < 2 {
@@ -37,9 +40,10 @@ pub(super) fn elevation(findings: &Findings, reader: Reader) -> Option<String> {
     let most = changes.iter().min_by(|a, b| a.2.total_cmp(&b.2))?;
     let least = changes.iter().max_by(|a, b| a.2.total_cmp(&b.2))?;
     let title = &findings.basin.first()?.measure.title;
-    let where_and_how_much = |(lower_m, upper_m, percent): (f64, f64, f64)| {
-        let (percent, lower) = (signed(percent, 0), reader.elevation_bare(lower_m));
-        format!("{percent} % ({lower} to {})", reader.elevation(upper_m))
+    let where_and_how_much = |(band, apart, percent): (&Band, Option<&String>, f64)| {
+        let (percent, lower) = (signed(percent, 0), reader.elevation_bare(band.lower_m));
+        let apart = apart.map_or(String::new(), |ground| format!(", {ground}"));
+        format!("{percent} % ({lower} to {}{apart})", reader.elevation(band.upper_m))
     };
     Some(format!(
         "By elevation, {title} at {} changes between {} and {}.",

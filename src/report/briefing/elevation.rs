@@ -4,6 +4,7 @@ use super::super::answer::period_name;
 use super::super::numbers::{fixed, signed};
 use super::super::study::Study;
 use super::{Figures, levels};
+use crate::basin::told_apart;
 use crate::figures::Part;
 use crate::season::{Kind, LEAST_REFERENCE_MM};
 use maud::{Markup, html};
@@ -11,6 +12,7 @@ use maud::{Markup, html};
 /// The section; nothing where nothing was measured.
 pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     let (findings, reader) = (study.findings, study.reader);
+    let apart = told_apart(findings.bands.iter().map(|of_band| &of_band.band));
     html! { @if let Some(headline) = findings.basin.first() {
         h2 { "Where it is lost" }
         (figures.of(Part::Elevation))
@@ -29,8 +31,9 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
                 th scope="col" { "Area, " (reader.units.area().word) }
                 @for name in levels::names(findings, reader) { th scope="col" { (name) } }
             } }
-            tbody { @for band in findings.bands.iter().rev() { @if let Some(measure) = band.measures.first() { tr {
-                th scope="row" { (reader.elevation_bare(band.band.lower_m)) " – " (reader.elevation_bare(band.band.upper_m)) }
+            tbody { @for (band, apart) in findings.bands.iter().zip(&apart).rev() { @if let Some(measure) = band.measures.first() { tr {
+                th scope="row" { (reader.elevation_bare(band.band.lower_m)) " – " (reader.elevation_bare(band.band.upper_m))
+                    @if let Some(ground) = apart { br; (ground) } }
                 td { (reader.area_bare(band.band.area_km2)) }
                 @for at in &measure.levels { td {
                     (reader.outcome(at.periods.q50, Kind::AmountMm))

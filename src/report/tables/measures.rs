@@ -1,5 +1,6 @@
 //! Every measure at every level: a table for each group of kinds, of the basin and of the bands.
 
+use super::GroundColumns;
 use super::ReportFile;
 use super::cells::{Told, chance, estimate, finish, name, optional, unit_names, write};
 use crate::basin::Band;
@@ -31,12 +32,14 @@ pub(super) fn measure_tables(findings: &Findings, units: UnitSystem) -> Vec<Repo
     tables
 }
 
+/// A band with its number, or the basin.
 type Place<'a> = Option<(usize, &'a Band)>;
 
 /// One row a place, measure and level, of the measures of the kinds of a group.
 fn table(rows: Vec<(Place<'_>, &MeasureFindings)>, units: UnitSystem, kinds: &[Kind]) -> Vec<u8> {
     let [unit, change_unit] = unit_names(kinds[0], units);
     let has_bands = rows.iter().any(|(place, _)| place.is_some());
+    let ground = GroundColumns::of(rows.iter().filter_map(|(place, _)| place.map(|(_, band)| band)));
     let mut writer = Writer::from_writer(Vec::new());
     let mut header: Vec<String> = Vec::new();
     if has_bands {
@@ -47,6 +50,7 @@ fn table(rows: Vec<(Place<'_>, &MeasureFindings)>, units: UnitSystem, kinds: &[K
             format!("upper_{length}"),
             format!("area_{area}"),
         ]);
+        header.extend(ground.names());
     }
     header.extend(["measure".to_owned(), format!("level_{}", units.warming().suffix)]);
     header.extend(["realizations", "realizations_none", "realizations_not_gone"].map(str::to_owned));
@@ -82,19 +86,26 @@ fn table(rows: Vec<(Place<'_>, &MeasureFindings)>, units: UnitSystem, kinds: &[K
     write(&mut writer, &header);
     for (place, measure) in rows.into_iter().filter(|(_, measure)| kinds.contains(&measure.measure.kind)) {
         for level in &measure.levels {
-            write(&mut writer, &row(place, &measure.measure, level, units));
+            write(&mut writer, &row(place, ground, &measure.measure, level, units));
         }
     }
     finish(writer)
 }
 
-fn row(place: Place<'_>, measure: &Measure, level: &LevelFindings, units: UnitSystem) -> Vec<String> {
+fn row(
+    place: Place<'_>,
+    ground: GroundColumns,
+    measure: &Measure,
+    level: &LevelFindings,
+    units: UnitSystem,
+) -> Vec<String> {
     let told = Told { units, kind: measure.kind };
     let mut row = Vec::new();
     if let Some((number, band)) = place {
         row.push(number.to_string());
         row.extend([band.lower_m, band.upper_m].map(|edge_m| units.elevation().of(edge_m).to_string()));
         row.push(units.area().of(band.area_km2).to_string());
+        row.extend(ground.cells(Some(band)));
     }
     row.extend([name(measure, units), units.warming().of(level.level_c).to_string()]);
     let periods = &level.periods;

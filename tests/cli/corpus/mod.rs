@@ -6,6 +6,7 @@ mod columns;
 mod dates;
 mod faults_at_once;
 mod feet;
+mod ground;
 mod keys;
 mod mutations;
 mod scenarios;

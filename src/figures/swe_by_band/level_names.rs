@@ -8,12 +8,12 @@ use plotters::style::RGBColor;
 const BETWEEN_PX: f64 = 12.0;
 
 /// Names and where their lines end.
-pub(super) struct Labels {
+pub(super) struct LevelNames {
     names: Vec<(f64, String, RGBColor)>,
     within: [f64; 2],
 }
 
-impl Labels {
+impl LevelNames {
     /// No names yet; they will stand between two edges.
     pub fn new(within: [f64; 2]) -> Self {
         Self { names: Vec::new(), within }
