@@ -7,7 +7,7 @@ use super::input::{InputFile, ScenarioFile, missing_file, read_data, read_scenar
 use crate::baseline::{
     BASELINE_YEARS_KEY, Baseline, BaselineChoice, BaselineYears, Detrended, LEAST_YEARS, detrend,
 };
-use crate::basin::Basin;
+use crate::basin::{Basin, GroundStated};
 use crate::fault::{Fault, Unlikely};
 use crate::fit::{Comparison, Model, Site, compare};
 use crate::observed::Observations;
@@ -106,6 +106,11 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             unlikely.extend(record.unlikely(basin.is_southern()));
             let station_m = scenario.weather.station_elevation_m;
             unlikely.extend(basin.unlikely(station_m));
+            unlikely.extend(basin.unused_ground(GroundStated {
+                slope: scenario.snow.options.radiation.is_some(),
+                canopy: true,
+                variation: scenario.snow.options.patchiness.is_some(),
+            }));
             unlikely
                 .extend(baseline.iter().flat_map(|baseline| baseline.unlikely(scenario.weather.detrend_to)));
             let yearly_mm = basin.precipitation_ratio(station_m) * mean_yearly_mm(&weather);
