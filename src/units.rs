@@ -100,6 +100,11 @@ impl ShareUnit {
     pub fn to_fraction(self, value: f64) -> f64 {
         value / self.of_all()
     }
+
+    /// A share in this unit, percent.
+    pub fn to_percent(self, value: f64) -> f64 {
+        value * (Self::Percent.of_all() / self.of_all())
+    }
 }
 
 /// Unit of a length: an elevation, or a depth of water where it is large.

@@ -25,6 +25,7 @@ fn columns() -> Columns {
             gauge: Gauge::Daily,
             trace: Vec::new(),
         },
+        humidity: None,
         format: Format::default(),
     }
 }

@@ -142,6 +142,7 @@ fn metric_columns() -> Columns {
             gauge: Gauge::Daily,
             trace: Vec::new(),
         },
+        humidity: None,
         format: Format::default(),
     }
 }
@@ -161,6 +162,7 @@ fn us_columns() -> Columns {
             gauge: Gauge::Accumulating { reading: Reading::EndOfDay, reset_tolerance_mm: 50.0 },
             trace: Vec::new(),
         },
+        humidity: None,
         format: Format { comment: Some(b'!'), missing: vec!["M".to_owned()], ..Format::default() },
     }
 }

@@ -24,7 +24,7 @@ impl WetDayChange {
 /// so that a month's mean is `c` times what it was.
 ///
 /// Where wet days become fewer, each stays with the chance `c/i`; where they become more, dry days become wet, each with the
-/// chance `(c/i - 1) * wet days/dry days`, and bring what a wet day of the same month of the realization brings. Which days
+/// chance `(c/i - 1) * wet days/dry days`, and bring what a wet day of the same month of the realization brings, in air as humid as its. Which days
 /// is decided by lots that are the same at every level: a level that loses more wet days loses those of the others, too.
 /// Then one factor a calendar month, over all years of the realization, makes the month's mean `c` times the unchanged one,
 /// to rounding; `i` so holds in the mean over realizations, but for the chance of which days went.
@@ -57,7 +57,7 @@ impl Generator for Intensity<'_> {
             days[usize::from(*month)].push(day);
         }
         for (days, mean_factor) in days.iter().zip(self.change.mean_factor) {
-            self.change_month(days, mean_factor, &lots, &mut into.precipitation_mm);
+            self.change_month(days, mean_factor, &lots, into);
         }
     }
 
@@ -73,7 +73,8 @@ impl Generator for Intensity<'_> {
 
 impl Intensity<'_> {
     /// Changes the days of one calendar month, in all years of a realization.
-    fn change_month(&self, days: &[usize], mean_factor: f64, lots: &[Lot], precipitation_mm: &mut [f64]) {
+    fn change_month(&self, days: &[usize], mean_factor: f64, lots: &[Lot], into: &mut Series) {
+        let (precipitation_mm, humidity_pct) = (&mut into.precipitation_mm, &mut into.relative_humidity_pct);
         let (wet, dry): (Vec<usize>, Vec<usize>) =
             days.iter().copied().partition(|day| precipitation_mm[*day] > self.wet_day_mm);
         let unchanged_mm: f64 = days.iter().map(|day| precipitation_mm[*day]).sum();
@@ -96,7 +97,11 @@ impl Intensity<'_> {
         }
         for day in dry {
             if !wet.is_empty() && becomes_wet(day) {
-                let amount_mm = wet_mm[lots[day].whose_of(wet.len())];
+                let whose = lots[day].whose_of(wet.len());
+                let amount_mm = wet_mm[whose];
+                if let Some(pct) = humidity_pct.get(wet[whose]).copied() {
+                    humidity_pct[day] = pct;
+                }
                 changed_wet.push((day, amount_mm));
                 changed_wet_mm += amount_mm;
             } else {

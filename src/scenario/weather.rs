@@ -5,9 +5,10 @@ use super::format::{read_date, read_format};
 use super::section::{Section, described};
 use crate::fault::Fault;
 use crate::snow::GaugeMultiplier;
-use crate::units::{DepthUnit, TemperatureUnit};
+use crate::units::{DepthUnit, ShareUnit, TemperatureUnit};
 use crate::weather::{
-    Columns, Gauge, Limits, PrecipitationColumn, Reading, TemperatureColumn, TemperatureColumns,
+    Columns, Gauge, HumidityColumn, Limits, PrecipitationColumn, Reading, TemperatureColumn,
+    TemperatureColumns,
 };
 
 /// The station's file and how to read it.
@@ -56,15 +57,17 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<RecordSource>, Option<We
     let date = read_date(section.section("date"));
     let temperature = read_temperatures(&mut section);
     let precipitation = read_precipitation(section.required_section("precipitation"));
+    let humidity = read_humidity(&mut section);
     let gauge_multiplier = read_multiplier(&mut section);
     let format = read_format(&mut section);
     let limits = read_limits(&mut section);
     let detrend_to = section.whole_in("detrend_to", 1700..=2200, 2005).map(|year| year as i32);
     let baseline_years = read_baseline_years(&mut section);
     section.finish();
-    let source = match (file, date, temperature, precipitation, format) {
-        (Some(file), Some(date), Some(temperature), Some(precipitation), Some(format)) => {
-            Some(RecordSource { file, columns: Columns { date, temperature, precipitation, format }, limits })
+    let source = match (file, date, temperature, precipitation, humidity, format) {
+        (Some(file), Some(date), Some(temperature), Some(precipitation), Ok(humidity), Some(format)) => {
+            let columns = Columns { date, temperature, precipitation, humidity, format };
+            Some(RecordSource { file, columns, limits })
         }
         _ => None,
     };
@@ -195,6 +198,46 @@ fn read_precipitation(mut section: Section<'_>) -> Option<PrecipitationColumn> {
     let trace = section.texts("trace").unwrap_or_default();
     section.finish();
     Some(PrecipitationColumn { column: column?, unit: unit?, gauge: gauge?, trace })
+}
+
+/// Something was typed that cannot be; its faults are noted.
+struct Unsound;
+
+/// Humidity, or none where no column is named for it.
+fn read_humidity(section: &mut Section<'_>) -> Result<Option<HumidityColumn>, Unsound> {
+    match ["relative_humidity", "dew_point"].map(|key| section.has(key)) {
+        [false, false] => {
+            section.knows("relative_humidity");
+            section.knows("dew_point");
+            Ok(None)
+        }
+        [true, true] => {
+            section.fault(Fault::key(
+                section.path_of("dew_point"),
+                "dew_point beside relative_humidity",
+                "one of the two",
+                "take one of them out",
+            ));
+            section.knows("relative_humidity");
+            section.knows("dew_point");
+            Err(Unsound)
+        }
+        [true, false] => {
+            section.knows("dew_point");
+            let mut of_column = section.section("relative_humidity");
+            let column =
+                of_column.required_text("column", "the column's name in the header", "add column = \"...\"");
+            let unit = of_column.choice_or("unit", &ShareUnit::NAMES, "pct");
+            of_column.finish();
+            let (column, unit) = column.zip(unit).ok_or(Unsound)?;
+            Ok(Some(HumidityColumn::Relative { column, unit }))
+        }
+        [false, true] => {
+            section.knows("relative_humidity");
+            let dew_point = read_temperature(section.section("dew_point")).ok_or(Unsound)?;
+            Ok(Some(HumidityColumn::DewPoint(dew_point)))
+        }
+    }
 }
 
 fn read_multiplier(section: &mut Section<'_>) -> Option<GaugeMultiplier> {

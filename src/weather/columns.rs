@@ -1,7 +1,7 @@
 //! How a station's file is to be read: which column holds what, in which unit.
 
 use crate::table::{DateColumn, Format};
-use crate::units::{DepthUnit, TemperatureUnit};
+use crate::units::{DepthUnit, ShareUnit, TemperatureUnit};
 
 /// A temperature column and its unit.
 #[derive(Debug, Clone, PartialEq)]
@@ -78,6 +78,30 @@ pub struct PrecipitationColumn {
     pub trace: Vec<String>,
 }
 
+/// Which column tells of the water in the air.
+#[derive(Debug, Clone, PartialEq)]
+pub enum HumidityColumn {
+    /// Relative humidity of the day.
+    Relative {
+        /// The header's name.
+        column: String,
+        /// How the file writes it.
+        unit: ShareUnit,
+    },
+    /// Dew point of the day.
+    DewPoint(TemperatureColumn),
+}
+
+impl HumidityColumn {
+    /// The header's name.
+    pub fn column(&self) -> &str {
+        match self {
+            Self::Relative { column, .. } => column,
+            Self::DewPoint(dew_point) => &dew_point.column,
+        }
+    }
+}
+
 /// How a station's file is to be read.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Columns {
@@ -87,6 +111,8 @@ pub struct Columns {
     pub temperature: TemperatureColumns,
     /// Precipitation.
     pub precipitation: PrecipitationColumn,
+    /// Humidity, which may be left out.
+    pub humidity: Option<HumidityColumn>,
     /// How the table is written.
     pub format: Format,
 }

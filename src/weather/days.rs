@@ -1,6 +1,6 @@
 //! Cells to numbers: a station's file as consecutive days in degC and mm, and every cell that cannot be read.
 
-use super::columns::{Columns, Gauge, TemperatureColumn, TemperatureColumns};
+use super::columns::{Columns, Gauge, HumidityColumn, TemperatureColumn, TemperatureColumns};
 use crate::calendar::days_between;
 use crate::fault::Fault;
 use crate::table::{DateReader, Row, Table, Tally, joined};
@@ -18,6 +18,8 @@ pub(super) struct RawDays {
     pub tmax_c: Vec<Option<f64>>,
     /// Daily amount, or the gauge's reading.
     pub gauge_mm: Vec<Option<f64>>,
+    /// Relative humidity, percent, or dew point, degC.
+    pub humidity: Vec<Option<f64>>,
     /// Line of the file that each day stands on; 0 where it has none.
     pub line: Vec<usize>,
 }
@@ -35,6 +37,8 @@ struct Measured {
     tmin_c: Option<f64>,
     tmax_c: Option<f64>,
     gauge_mm: Option<f64>,
+    /// Relative humidity, percent, or dew point, degC.
+    humidity: Option<f64>,
 }
 
 /// Where the quantities stand; none where a column is not there.
@@ -44,6 +48,8 @@ struct Places {
     /// None also where the file has the mean alone.
     tmax: Option<usize>,
     gauge: Option<usize>,
+    /// None also where the scenario names no such column.
+    humidity: Option<usize>,
 }
 
 /// The columns that are there, and the faults of those that are not.
@@ -110,7 +116,8 @@ fn find<'c>(table: &Table<'_>, columns: &'c Columns) -> Result<Found<'c>, Vec<Fa
     let temperatures: Vec<Option<usize>> =
         columns.temperature.named().iter().map(|(_, temperature)| place(&temperature.column)).collect();
     let gauge = place(&columns.precipitation.column);
-    let numbers: Vec<usize> = temperatures.iter().copied().flatten().chain(gauge).collect();
+    let humidity = columns.humidity.as_ref().and_then(|humidity| place(humidity.column()));
+    let numbers: Vec<usize> = temperatures.iter().copied().flatten().chain(gauge).chain(humidity).collect();
     let faults = joined(faults);
     if dates.is_none() && numbers.is_empty() {
         return Err(faults);
@@ -126,7 +133,7 @@ fn find<'c>(table: &Table<'_>, columns: &'c Columns) -> Result<Found<'c>, Vec<Fa
         return Err(faults.into_iter().chain([twice]).collect());
     }
     let [tmin, tmax] = [0, 1].map(|at| temperatures.get(at).copied().flatten());
-    Ok(Found { dates, places: Places { tmin, tmax, gauge }, faults })
+    Ok(Found { dates, places: Places { tmin, tmax, gauge, humidity }, faults })
 }
 
 fn read_row(
@@ -147,6 +154,12 @@ fn read_row(
         }
         TemperatureColumns::MeanAlone(mean) => [celsius(places.tmin, mean); 2],
     };
+    let humidity = places.humidity.zip(columns.humidity.as_ref()).and_then(|(at, column)| {
+        cell(at).map(|value| match column {
+            HumidityColumn::Relative { unit, .. } => unit.to_percent(value),
+            HumidityColumn::DewPoint(dew_point) => dew_point.unit.to_celsius(value),
+        })
+    });
     let gauge = places.gauge.and_then(|at| {
         let is_trace = precipitation.trace.iter().any(|mark| mark == row.cell(at));
         if is_trace { Some(0.0) } else { cell(at) }
@@ -163,7 +176,7 @@ fn read_row(
             "if the gauge accumulates, say so with gauge = \"accumulating\"; else add the mark to 'missing'",
         ));
     }
-    Measured { tmin_c, tmax_c, gauge_mm }
+    Measured { tmin_c, tmax_c, gauge_mm, humidity }
 }
 
 /// What is wrong with the order of dates, by number of the line at fault: what was expected, and how to mend it.
@@ -210,17 +223,24 @@ fn complain_of_order(table: &Table<'_>, dates: &DateReader<'_>, faults: &OutOfOr
 
 /// The lines as consecutive days.
 fn in_order(first: NaiveDate, lines: &[Line]) -> RawDays {
-    let mut days =
-        RawDays { first, tmin_c: Vec::new(), tmax_c: Vec::new(), gauge_mm: Vec::new(), line: Vec::new() };
+    let mut days = RawDays {
+        first,
+        tmin_c: Vec::new(),
+        tmax_c: Vec::new(),
+        gauge_mm: Vec::new(),
+        humidity: Vec::new(),
+        line: Vec::new(),
+    };
     for line in lines {
         let index = days_between(first, line.date);
-        for column in [&mut days.tmin_c, &mut days.tmax_c, &mut days.gauge_mm] {
+        for column in [&mut days.tmin_c, &mut days.tmax_c, &mut days.gauge_mm, &mut days.humidity] {
             column.resize(index, None);
         }
         days.line.resize(index, 0);
         days.tmin_c.push(line.measured.tmin_c);
         days.tmax_c.push(line.measured.tmax_c);
         days.gauge_mm.push(line.measured.gauge_mm);
+        days.humidity.push(line.measured.humidity);
         days.line.push(line.number);
     }
     days

@@ -5,12 +5,13 @@ use super::days::read_days;
 use super::declared::Declared;
 use super::gaps;
 use super::gauge::{GaugeCount, daily_amounts};
+use super::humidity::{HumidityCount, filled, sift_humidity};
 use super::series::Series;
 use super::sift::{sift, sift_amounts};
 use super::suspicious::Suspicion;
 use super::years::{Limits, Screening, SkippedYear, Why};
 use crate::calendar::{MonthDay, WaterYearStart, date_of};
-use crate::fault::Fault;
+use crate::fault::{Fault, Place};
 use crate::units::UnitSystem;
 use chrono::NaiveDate;
 use serde::Serialize;
@@ -44,6 +45,9 @@ pub struct Counts {
     pub dry_for_want_of_data_days: usize,
     /// What the accumulating gauge did, if it is one.
     pub gauge: Option<GaugeCount>,
+    /// What became of the humidity, if there is one.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub humidity: Option<HumidityCount>,
 }
 
 /// A station's record: usable water years, those left out, and what was counted on the way.
@@ -94,6 +98,8 @@ pub fn read(
     let mut suspicions = sifted.suspicions;
     let (impossible_amounts, of_amounts) = sift_amounts(&days, &mut amounts, columns);
     suspicions.extend(of_amounts);
+    let humidity = sift_humidity(&days, columns);
+    suspicions.extend(humidity.iter().flat_map(|humidity| humidity.suspicions.iter().cloned()));
     let no_temperature: Vec<bool> =
         days.tmin_c.iter().zip(&days.tmax_c).map(|(tmin, tmax)| tmin.is_none() || tmax.is_none()).collect();
     let is_missing: Vec<bool> =
@@ -123,7 +129,9 @@ pub fn read(
         last: date_of(days.first, mean_c.len()),
         days: mean_c.len(),
         absent_days: days.line.iter().filter(|line| **line == 0).count(),
-        impossible_cells: sifted.impossible_cells + impossible_amounts,
+        impossible_cells: sifted.impossible_cells
+            + impossible_amounts
+            + humidity.as_ref().map_or(0, |humidity| humidity.impossible_cells),
         far_temperature_cells: sifted.far_cells,
         stuck_temperature_cells: sifted.stuck_cells,
         temperature_missing_days: no_temperature.iter().filter(|missing| **missing).count(),
@@ -132,6 +140,7 @@ pub fn read(
         precipitation_missing_days: amounts.iter().filter(|amount| amount.is_none()).count(),
         dry_for_want_of_data_days: 0,
         gauge,
+        humidity: None,
     };
     let mut last_year = None;
     for year in &usable {
@@ -144,8 +153,31 @@ pub fn read(
         series.push_days(year.water_year, start.first_day(year.water_year), follows, weather);
         last_year = Some(year.water_year);
     }
+    if let Some(humidity) = humidity {
+        let in_use = usable.iter().flat_map(|year| &humidity.pct[year.first_index..][..year.days]);
+        let measured: Vec<Option<f64>> = in_use.copied().collect();
+        let mut count = HumidityCount {
+            missing_days: humidity.pct.iter().filter(|pct| pct.is_none()).count(),
+            lowered_to_100_days: humidity.lowered_to_100_days,
+            ..HumidityCount::default()
+        };
+        series.relative_humidity_pct = filled(&measured, &series, &mut count)
+            .map_err(|days| vec![too_little_humidity(file, days, count.wet_days)])?;
+        counts.humidity = Some(count);
+    }
     let has_daily_range = matches!(columns.temperature, TemperatureColumns::Extremes { .. });
     Ok(Record { series, skipped, counts, suspicions, has_daily_range, declared })
+}
+
+fn too_little_humidity(file: &str, measured_wet_days: usize, wet_days: usize) -> Fault {
+    Fault {
+        place: Place::File(file.to_owned()),
+        found: format!("humidity on {measured_wet_days} of the {wet_days} days with precipitation that are in use"),
+        expected: "humidity on at least half of them: too little humidity to tell rain from snow by".to_owned(),
+        mend: "check its column, its unit and the marks for 'not measured', or take relative_humidity or dew_point out of \
+               [weather]"
+            .to_owned(),
+    }
 }
 
 fn nothing_usable(file: &str, skipped: &[SkippedYear], mend: String) -> Fault {
@@ -158,7 +190,7 @@ fn nothing_usable(file: &str, skipped: &[SkippedYear], mend: String) -> Fault {
         found += &format!("; and {} more", skipped.len() - 5);
     }
     Fault {
-        place: crate::fault::Place::File(file.to_owned()),
+        place: Place::File(file.to_owned()),
         found,
         expected: "at least one whole water year of temperature and precipitation".to_owned(),
         mend,

@@ -9,6 +9,7 @@ mod drawn_weather;
 mod generator_sheet;
 mod gradients;
 mod ground;
+mod humidity;
 mod identities;
 mod intensity;
 mod interrupt;

@@ -185,3 +185,20 @@ fn dry_days_become_wet() {
     assert!((share(1.25) - 1.25 * before).abs() < 0.015, "{} from {before}", share(1.25));
     assert_eq!(share(5.0), 1.0);
 }
+
+/// A day that becomes wet has the humidity of a wet day, one that stays dry its own: here all wet days have 90 % and all dry ones
+/// 30 %.
+#[test]
+fn days_that_become_wet_are_as_humid_as_wet_ones() {
+    let mut record = thirty_years();
+    record.relative_humidity_pct =
+        record.precipitation_mm.iter().map(|mm| if *mm > 0.0 { 90.0 } else { 30.0 }).collect();
+    let blocks = blocks(&record);
+    let changed = filled(&at(&blocks, 1.0, [2.0; 12]), 3, 10);
+    let wet = wet_days(&changed);
+    assert!(wet.len() > 3 * wet_days(&filled(&blocks, 3, 10)).len() / 2, "days became wet");
+    for (day, pct) in changed.relative_humidity_pct.iter().enumerate() {
+        let expected = if wet.binary_search(&day).is_ok() { 90.0 } else { 30.0 };
+        assert_eq!(*pct, expected, "day {day}");
+    }
+}

@@ -32,6 +32,7 @@ fn record() -> Series {
             gauge: Gauge::Daily,
             trace: Vec::new(),
         },
+        humidity: None,
         format: Format::default(),
     };
     let text = include_str!("../fixtures/seattle-2012-2015.csv");

@@ -22,6 +22,10 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
             (reader.amount(record.mean_precipitation_mm)) "; in the years in use, " (counts.interpolated_days)
             " days have interpolated temperatures and " (counts.dry_for_want_of_data_days)
             " run without precipitation because it is missing."
+            @if let Some(humidity) = counts.humidity {
+                " Of " (fixed(humidity.wet_days as f64, 0)) " wet days in use, " (humidity.filled_wet_days)
+                " have no humidity of their own and take the mean of the wet days of their month."
+            }
             @if counts.crossed_temperature_days > 0 {
                 " On " (counts.crossed_temperature_days) " days the minimum stood above the maximum; both were taken as missing."
             }

@@ -4,7 +4,7 @@ use super::super::normal::baseline_years_in_words;
 use super::super::numbers::{counted, fixed};
 use super::{Checked, Page};
 use crate::baseline::SeasonYears;
-use crate::weather::in_groups;
+use crate::weather::{HumidityCount, in_groups};
 
 impl Checked<'_> {
     pub(super) fn write_record(&self, page: &mut Page) {
@@ -44,6 +44,7 @@ impl Checked<'_> {
                 fixed(counts.dry_for_want_of_data_days as f64, 0)
             ),
         );
+        self.write_humidity(page);
         page.line(
             "taken as missing",
             format!(
@@ -67,6 +68,21 @@ impl Checked<'_> {
                 ),
             );
         }
+    }
+
+    fn write_humidity(&self, page: &mut Page) {
+        let Some(humidity) = self.record.counts.humidity else { return };
+        let HumidityCount { missing_days, lowered_to_100_days, wet_days, filled_wet_days } = humidity;
+        let [of_wet, wet_days] = [filled_wet_days, wet_days].map(|days| fixed(days as f64, 0));
+        page.line(
+            "humidity missing",
+            format!(
+                "{}; {of_wet} of {wet_days} wet days in use have the mean of the wet days of their month; {} above 100 % \
+                 read as 100 %",
+                counted(missing_days, "day"),
+                counted(lowered_to_100_days, "day")
+            ),
+        );
     }
 
     pub(super) fn write_precipitation(&self, page: &mut Page) {

@@ -7,6 +7,7 @@ mod dates;
 mod faults_at_once;
 mod feet;
 mod ground;
+mod humidity;
 mod keys;
 mod mutations;
 mod scenarios;
