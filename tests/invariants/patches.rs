@@ -96,24 +96,27 @@ fn errors(variation: f64, classes: usize) -> [f64; 2] {
     largest
 }
 
-/// Classes of equal area part from the closed form by half a class of cover at most and the steps of a day's melt (5 of 300 mm,
-/// which the densest part of the distribution turns into 2 % of the area), and by less of SWE the more they are: 100 classes
-/// leave a thousandth of the snowfall.
+/// Classes of equal area part from the closed form by less than 0.7 of a class of cover (an exponential tail is cut at its mean
+/// after 0.63 of it), and by less of SWE the more they are. How much less was computed outside: the largest difference over the
+/// season in shares of the snowfall, by `scipy.stats.norm` (scipy 1.17.1) from the class means and the closed form; 2e-5 is the
+/// rounding of the values.
 #[test]
 fn classes_converge_to_the_lognormal() {
-    for variation in [0.2, 0.5, 0.9] {
-        let of_classes = [2, 5, 10, 20, 50, 100].map(|classes| (classes, errors(variation, classes)));
-        for (classes, [covered, swe]) in of_classes {
+    const CLASSES: [usize; 6] = [2, 5, 10, 20, 50, 100];
+    let of_variations = [
+        (0.2, [0.02663, 0.00972, 0.00428, 0.00209, 0.00077, 0.0004]),
+        (0.5, [0.08292, 0.03301, 0.0167, 0.00863, 0.00363, 0.00188]),
+        (0.9, [0.16075, 0.07467, 0.04208, 0.02359, 0.01093, 0.00607]),
+    ];
+    for (variation, of_classes) in of_variations {
+        for (classes, expected) in CLASSES.into_iter().zip(of_classes) {
+            let [covered, swe] = errors(variation, classes);
             assert!(
-                covered <= 0.5 / classes as f64 + 0.001,
+                covered <= 0.7 / classes as f64,
                 "{variation} in {classes} classes: cover off by {covered}"
             );
-            assert!(swe <= 0.25 / classes as f64, "{variation} in {classes} classes: SWE off by {swe}");
+            assert!((swe - expected).abs() < 2e-5, "{variation} in {classes} classes: SWE off by {swe}");
         }
-        for pair in of_classes.windows(2) {
-            assert!(pair[1].1[1] < pair[0].1[1], "{variation}: {of_classes:?}");
-        }
-        assert!(of_classes[5].1[1] < 0.001, "{variation}: {of_classes:?}");
     }
 }
 
