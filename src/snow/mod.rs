@@ -41,9 +41,7 @@ pub use sun::{
     day_length_h, declination_rad, extraterrestrial_radiation, highest_radiation, inverse_relative_distance,
     potential_radiation, relative_radiation, sunset_hour_angle_rad,
 };
-pub use wet_bulb::{
-    relative_humidity_pct, saturation_vapour_pressure_kpa, standard_pressure_kpa, wet_bulb_c,
-};
+pub use wet_bulb::{standard_pressure_kpa, wet_bulb_c};
 
 /// The larger of two numbers, neither of them NaN: one instruction, where `f64::max` also orders NaN.
 #[inline(always)]

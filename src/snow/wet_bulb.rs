@@ -1,6 +1,7 @@
 //! Wet-bulb temperature, for rain and snow: in dry air a falling flake cools itself and stays snow longer.
 
 use super::{larger, smaller};
+use crate::weather::saturation_vapour_pressure_kpa;
 
 /// The psychrometer's coefficient of a ventilated wet bulb, per degC (FAO-56, Allen et al. 1998, equation 8).
 const PSYCHROMETER_PER_C: f64 = 0.000_665;
@@ -10,17 +11,6 @@ const LOWEST_HUMIDITY_PCT: f64 = 1.0;
 const SETTLED_C: f64 = 1e-7;
 /// More steps than any air between -90 and 60 degC needs.
 const MOST_STEPS: usize = 24;
-
-/// Saturation vapour pressure over water, kPa: `0.6108*exp(17.27*T/(T + 237.3))` (FAO-56, equation 11), below 0 degC, too.
-/// For temperatures above -237 degC.
-///
-/// ```
-/// use thawline::snow::saturation_vapour_pressure_kpa;
-/// assert_eq!(saturation_vapour_pressure_kpa(0.0), 0.6108);
-/// ```
-pub fn saturation_vapour_pressure_kpa(temperature_c: f64) -> f64 {
-    0.6108 * libm::exp(17.27 * temperature_c / (temperature_c + 237.3))
-}
 
 /// Pressure of the standard atmosphere, kPa: `101.325*(1 - 0.0065*H/288.15)^5.25588` (ISO 2533:1975, below 11 km).
 ///
@@ -33,12 +23,6 @@ pub fn standard_pressure_kpa(elevation_m: f64) -> f64 {
     const GAS_CONSTANT_J_KG_K: f64 = 287.052_87;
     let exponent = GRAVITY_M_S2 / (GAS_CONSTANT_J_KG_K * LAPSE_C_PER_M);
     101.325 * libm::pow(larger(1.0 - LAPSE_C_PER_M * elevation_m / SEA_LEVEL_K, 0.0), exponent)
-}
-
-/// Relative humidity of air with a dew point, percent, at most 100: `100*e_s(dew point)/e_s(T)`, both over water.
-pub fn relative_humidity_pct(mean_c: f64, dew_point_c: f64) -> f64 {
-    let share = saturation_vapour_pressure_kpa(dew_point_c) / saturation_vapour_pressure_kpa(mean_c);
-    smaller(100.0 * share, 100.0)
 }
 
 /// Wet-bulb temperature, degC: where `e_s(Tw) - RH/100*e_s(T) = 0.000665*p*(T - Tw)`, e_s over water at all temperatures.

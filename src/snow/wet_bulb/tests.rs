@@ -1,4 +1,5 @@
-use super::{relative_humidity_pct, saturation_vapour_pressure_kpa, standard_pressure_kpa, wet_bulb_c};
+use super::{standard_pressure_kpa, wet_bulb_c};
+use crate::weather::saturation_vapour_pressure_kpa;
 
 const SEA_LEVEL_KPA: f64 = 101.325;
 
@@ -49,15 +50,6 @@ fn every_air_has_its_wet_bulb() {
             assert_eq!(wet_bulb_c(mean_c, 100.0, pressure_kpa), mean_c, "saturated");
         }
     }
-}
-
-/// A dew point says the same as a humidity: air at its dew point is saturated. At 2 degC with a dew point of -5 degC it has
-/// 59.7 %, by these coefficients as by the WMO's of 17.62 and 243.12 (both worked apart, 59.69 and 59.82).
-#[test]
-fn humidity_from_a_dew_point() {
-    assert_eq!(relative_humidity_pct(3.7, 3.7), 100.0);
-    assert_eq!(relative_humidity_pct(3.7, 4.0), 100.0);
-    assert!((relative_humidity_pct(2.0, -5.0) - 59.69).abs() < 0.01);
 }
 
 /// The tropopause and above are no place for a basin, but no number goes astray there.
