@@ -140,6 +140,16 @@ fn base64(bytes: &[u8]) -> String {
     text
 }
 
+/// `10 elevation bands`; where several share a range, `14 bands in 10 ranges of elevation`.
+fn bands_in_words(basin: &Basin) -> String {
+    match (basin.bands.len(), basin.ranges()) {
+        (bands, ranges) if ranges < bands => {
+            format!("{} in {} of elevation", counted(bands, "band"), counted(ranges, "range"))
+        }
+        (bands, _) => counted(bands, "elevation band"),
+    }
+}
+
 #[cfg(test)]
 mod tests {
     /// RFC 4648, section 10.
@@ -148,15 +158,5 @@ mod tests {
         assert_eq!(super::base64(b"foobar"), "Zm9vYmFy");
         assert_eq!(super::base64(b"fooba"), "Zm9vYmE=");
         assert_eq!(super::base64(b"foob"), "Zm9vYg==");
-    }
-}
-
-/// `10 elevation bands`; where several share a range, `14 bands in 10 ranges of elevation`.
-fn bands_in_words(basin: &Basin) -> String {
-    match (basin.bands.len(), basin.ranges()) {
-        (bands, ranges) if ranges < bands => {
-            format!("{} in {} of elevation", counted(bands, "band"), counted(ranges, "range"))
-        }
-        (bands, _) => counted(bands, "elevation band"),
     }
 }

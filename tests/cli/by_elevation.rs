@@ -87,7 +87,7 @@ fn a_warming_that_changes_with_elevation_is_said() {
     assert_eq!(run["parameters"]["warming"]["level_change_pct_per_1000m"], 25.0);
     let summary: Value = serde_json::from_str(&basin.read("out/summary.json")).unwrap();
     let mean_m = summary["basin"]["mean_elevation_of_warming_m"].as_f64().unwrap();
-    assert!((mean_m - 2165.384_615_384_615).abs() < 1e-9, "{mean_m}");
+    assert!((mean_m - 2_165.384_615_384_615).abs() < 1e-9, "{mean_m}");
 
     let even = with("", "");
     assert!(checked(&even).contains("warming.level_change_pct_per_1000m = 0"), "a default in force");

@@ -26,6 +26,9 @@ impl Column {
     }
 }
 
+/// Whether a column is told, its head, and how its cells are written.
+type Told = (bool, &'static str, fn(&Ground) -> String);
+
 impl GroundColumns {
     /// None where every band has a range of its own.
     pub fn of(bands: &[Found<'_>]) -> Self {
@@ -33,7 +36,7 @@ impl GroundColumns {
             return Self(Vec::new());
         }
         let stated = GroundStated::of(bands.iter().map(|found| found.band));
-        let columns: [(bool, &str, fn(&Ground) -> String); 4] = [
+        let columns: [Told; 4] = [
             (stated.slope, "Facing", |ground| match ground.slope_deg {
                 0.0 => "–".to_owned(),
                 _ => format!("{:.0}°", ground.aspect_deg),
@@ -47,7 +50,7 @@ impl GroundColumns {
             }),
         ];
         let told = columns.into_iter().filter(|(is_told, ..)| *is_told);
-        let column = |(_, head, cell): (bool, &'static str, fn(&Ground) -> String)| Column {
+        let column = |(_, head, cell): Told| Column {
             head,
             cells: bands.iter().map(|found| cell(&found.band.ground)).collect(),
         };

@@ -7,6 +7,9 @@ use crate::basin::{Band, GroundStated};
 #[derive(Clone, Copy)]
 pub(in super::super) struct GroundColumns(GroundStated);
 
+/// Whether a column is told, its name, and what stands in it.
+type Told = (bool, &'static str, fn(&Band) -> Option<f64>);
+
 impl GroundColumns {
     /// Of all bands that the table tells of.
     pub fn of<'b>(bands: impl IntoIterator<Item = &'b Band>) -> Self {
@@ -25,7 +28,7 @@ impl GroundColumns {
             .flat_map(move |(is_told, _, value)| is_told.then(|| optional(band.and_then(value))))
     }
 
-    fn columns(self) -> [(bool, &'static str, fn(&Band) -> Option<f64>); 4] {
+    fn columns(self) -> [Told; 4] {
         let Self(stated) = self;
         [
             (stated.slope, "slope_deg", |band| Some(band.ground.slope_deg)),
