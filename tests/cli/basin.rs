@@ -75,6 +75,11 @@ impl Basin {
         self.write("scenario.toml", &text.replace(from, to));
     }
 
+    /// The scenario with more text at its end.
+    pub fn append(&self, more: &str) {
+        self.write("scenario.toml", &format!("{}{more}", self.read("scenario.toml")));
+    }
+
     pub fn command(&self, words: &str) -> Command {
         let mut command = Command::new(env!("CARGO_BIN_EXE_thawline"));
         command.current_dir(self.path()).args(words.split_whitespace());

@@ -19,6 +19,7 @@ mod observed;
 mod results;
 mod scenario_faults;
 mod season_keys;
+mod snow_options;
 mod streams;
 mod tables;
 mod units;
