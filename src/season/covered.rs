@@ -1,6 +1,6 @@
 //! How much of the ground the snow covers: covered days, and the covered share on the survey dates.
 
-use super::{Asked, Kind, Measure, Peaks, SeasonSettings, name_of};
+use super::{Asked, BARE_MM, Kind, Measure, Peaks, SeasonSettings, name_of, rows};
 use crate::calendar::day_of_water_year;
 use crate::snow::YearBlock;
 
@@ -18,13 +18,14 @@ pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
 /// Takes the family's measures: a place is covered where a day begins with at least 1 mm. Of an area it is the share that is
 /// covered, and its covered days are those shares' sum over the year: the mean over the area of every place's days.
 pub(super) fn take(block: &mut YearBlock, _: &Peaks, asked: &Asked, into: &mut [f64]) {
-    let (days, on_dates) = into.split_at_mut(block.width);
+    let (width, means_at) = (block.width, block.means_at);
+    let (days, on_dates) = into.split_at_mut(width);
     days.fill(0.0);
-    for day in 0..block.days {
-        for (column, covered_days) in days.iter_mut().enumerate() {
-            *covered_days += block.covered_share(day, column);
-        }
-    }
+    let swe = &block.swe_mm[..block.days * width];
+    rows::count_both(swe, swe, BARE_MM, days);
+    let of_means = &mut days[means_at..];
+    of_means.fill(0.0);
+    rows::add(&block.covered[..block.days * (width - means_at)], of_means);
     for (shares, survey) in on_dates.chunks_exact_mut(block.width).zip(&asked.settings.survey_dates) {
         let day = day_of_water_year(block.first, *survey) - 1;
         for (column, share) in shares.iter_mut().enumerate() {

@@ -42,6 +42,12 @@ pub fn saturation_vapour_pressure_kpa(temperature_c: f64) -> f64 {
     0.6108 * libm::exp(17.27 * temperature_c / (temperature_c + 237.3))
 }
 
+/// Relative humidity of air with a dew point, percent, at most 100: `100*e_s(dew point)/e_s(T)`, both over water.
+pub fn relative_humidity_pct(mean_c: f64, dew_point_c: f64) -> f64 {
+    let share = saturation_vapour_pressure_kpa(dew_point_c) / saturation_vapour_pressure_kpa(mean_c);
+    (100.0 * share).min(100.0)
+}
+
 /// Relative humidity of a file's days, percent, where it was measured.
 pub(super) struct Sifted {
     pub pct: Vec<Option<f64>>,
@@ -56,17 +62,23 @@ pub(super) struct Sifted {
 pub(super) fn sift_humidity(days: &RawDays, columns: &Columns) -> Option<Sifted> {
     let mut finder = Finder { first_day: days.first, line: days.line.clone(), found: Vec::new() };
     let mut cells = days.humidity.clone();
-    let (impossible_cells, mut pct) = match columns.humidity.as_ref()? {
-        HumidityColumn::Relative { .. } => (sift_relative(&mut finder, &mut cells), cells),
+    let (impossible_cells, pct, lowered_to_100_days) = match columns.humidity.as_ref()? {
+        HumidityColumn::Relative { .. } => {
+            let impossible = sift_relative(&mut finder, &mut cells);
+            let lowered = cells.iter().flatten().filter(|pct| **pct > 100.0).count();
+            (impossible, cells.into_iter().map(|pct| Some(pct?.min(100.0))).collect(), lowered)
+        }
         HumidityColumn::DewPoint(_) => {
             let impossible = sift_dew_points(&mut finder, days, &mut cells);
-            (impossible, (0..cells.len()).map(|day| pct_of_dew_point(days, day, cells[day]?)).collect())
+            let both: Vec<Option<(f64, f64)>> =
+                (0..cells.len()).map(|day| measured_mean_c(days, day).zip(cells[day])).collect();
+            let lowered = both.iter().flatten().filter(|(mean_c, dew_point_c)| dew_point_c > mean_c).count();
+            let pct = both
+                .into_iter()
+                .map(|both| both.map(|(mean_c, dew_point_c)| relative_humidity_pct(mean_c, dew_point_c)));
+            (impossible, pct.collect(), lowered)
         }
     };
-    let lowered_to_100_days = pct.iter().flatten().filter(|pct| **pct > 100.0).count();
-    for pct in pct.iter_mut().flatten() {
-        *pct = pct.min(100.0);
-    }
     Some(Sifted { pct, lowered_to_100_days, impossible_cells, suspicions: finder.found })
 }
 
@@ -101,11 +113,9 @@ fn sift_dew_points(finder: &mut Finder, days: &RawDays, cells: &mut [Option<f64>
     impossible
 }
 
-/// Vapour pressure over that of saturation at the mean of the minimum and the maximum, where both were measured.
-fn pct_of_dew_point(days: &RawDays, day: usize, dew_point_c: f64) -> Option<f64> {
-    let (low_c, high_c) = days.tmin_c[day].zip(days.tmax_c[day])?;
-    let mean_c = (low_c + high_c) / 2.0;
-    Some(100.0 * saturation_vapour_pressure_kpa(dew_point_c) / saturation_vapour_pressure_kpa(mean_c))
+/// The mean of a day's minimum and maximum, where both were measured.
+fn measured_mean_c(days: &RawDays, day: usize) -> Option<f64> {
+    days.tmin_c[day].zip(days.tmax_c[day]).map(|(low_c, high_c)| (low_c + high_c) / 2.0)
 }
 
 /// A mean over days, as they come.

@@ -23,7 +23,7 @@ pub use columns::{
     Columns, Gauge, HumidityColumn, PrecipitationColumn, Reading, TemperatureColumn, TemperatureColumns,
 };
 pub use gauge::GaugeCount;
-pub use humidity::{HumidityCount, saturation_vapour_pressure_kpa};
+pub use humidity::{HumidityCount, relative_humidity_pct, saturation_vapour_pressure_kpa};
 pub use plausible::Means;
 pub use record::{Counts, Record, read};
 pub use series::{Series, YearSpan, YearView};
