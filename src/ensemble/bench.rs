@@ -35,7 +35,7 @@ impl<'p> Bench<'p> {
         let lanes = group.lanes;
         Self {
             lanes,
-            engine: Engine::on_path(lanes, false, path),
+            engine: Engine::on_path(lanes, false, path).with_cover(),
             weather: Series::default(),
             means: YearBlock::of_means(lanes),
             memory: Memory::default(),

@@ -42,7 +42,7 @@ impl RecordRun<'_> {
     pub fn years(&self, weather: &Series) -> Result<Vec<RecordYear>, OpenLedger> {
         let Self { lanes, levels, reference, bands, measures } = *self;
         let surveys = &measures.settings().survey_dates;
-        let mut engine = Engine::new(lanes, false);
+        let mut engine = Engine::new(lanes, false).with_cover();
         let mut years = Vec::with_capacity(weather.years.len());
         let mut taken = Vec::new();
         engine.years(weather, |span, block| {

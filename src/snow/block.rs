@@ -37,7 +37,8 @@ pub struct YearBlock {
     pub snow_mm: Vec<f64>,
     /// Snow that went into the air, mm; no rows where none can.
     pub sublimation_mm: Vec<f64>,
-    /// Share of the area of each mean, its columns alone, that holds at least 1 mm as a day begins.
+    /// Share of the area of each mean, its columns alone, that holds at least 1 mm as a day begins; no rows where it was not
+    /// asked for.
     pub covered: Vec<f64>,
     /// Everything else a day has, where it was asked for.
     pub detail: Option<Detail>,
@@ -88,7 +89,7 @@ impl YearBlock {
 
     /// A narrow block that holds the basin means of some lanes and nothing else.
     pub fn of_means(lanes: &Lanes) -> Self {
-        Self::wide(0, 0, lanes)
+        Self::wide(0, 0, lanes).with_cover()
     }
 
     fn wide(lane_width: usize, band_width: usize, lanes: &Lanes) -> Self {
@@ -108,9 +109,15 @@ impl YearBlock {
             rain_mm: rows(LONGEST_YEAR),
             snow_mm: rows(LONGEST_YEAR),
             sublimation_mm: rows(if lanes.has_stores() { LONGEST_YEAR } else { 0 }),
-            covered: vec![0.0; LONGEST_YEAR * (width - lane_width)],
+            covered: Vec::new(),
             detail: None,
         }
+    }
+
+    /// Makes room for the covered shares.
+    pub(super) fn with_cover(mut self) -> Self {
+        self.covered = vec![0.0; LONGEST_YEAR * (self.width - self.means_at)];
+        self
     }
 
     /// Copies the basin means into a narrow block, whose columns they are.
@@ -143,11 +150,12 @@ impl YearBlock {
         &table[day * self.width..(day + 1) * self.width]
     }
 
-    /// The covered share of a column as a day begins, days counted from 0: a lane is covered or not.
-    pub fn covered_share(&self, day: usize, column: usize) -> f64 {
+    /// The covered share of a column as a day begins, days counted from 0: a lane is covered or not. None of a mean where it
+    /// was not asked for.
+    pub fn covered_share(&self, day: usize, column: usize) -> Option<f64> {
         match column.checked_sub(self.means_at) {
-            Some(mean) => self.covered[day * (self.width - self.means_at) + mean],
-            None => cover(self.swe_mm[day * self.width + column]),
+            Some(mean) => self.covered.get(day * (self.width - self.means_at) + mean).copied(),
+            None => Some(cover(self.swe_mm[day * self.width + column])),
         }
     }
 }

@@ -84,7 +84,7 @@ pub(super) fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, bloc
         let sublimation = block.sublimation_mm.get_mut(row).unwrap_or_default();
         let (sublimation, mean_sublimation) = sublimation.split_at_mut(width.min(sublimation.len()));
         let means = row_width - width;
-        let covered = &mut block.covered[day * means..(day + 1) * means];
+        let covered = block.covered.get_mut(day * means..(day + 1) * means);
         let mut fallen = Fallen { rain, snow };
         let with_snow = first_with_any(swe);
         let month = month_of(weather, day, width);
@@ -152,7 +152,9 @@ pub(super) fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, bloc
             detail.keep(day, state);
         }
         lanes.means.row(swe, with_snow, mean_swe);
-        lanes.means.covered_row(swe, with_snow, covered);
+        if let Some(covered) = covered {
+            lanes.means.covered_row(swe, with_snow, covered);
+        }
         lanes.means.row(net_melt, from, mean_net_melt);
         lanes.means.row(outflow, from, mean_outflow);
         lanes.means.row(bare_ground_rain, if is_wet { 0 } else { width }, mean_bare_ground_rain);
@@ -286,8 +288,9 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_STORES: bool>(
         &state.melt_degrees[from..],
         &state.freeze_degrees[from..],
         &lanes.melt_factor[at.day.clone()][from..],
-        &lanes.refreeze_factor[at.day.clone()][from..],
         &lanes.holding_fraction[from..],
+        &lanes.refreeze_share[from..],
+        &lanes.refreeze_factor[from..],
         stores,
     );
 }

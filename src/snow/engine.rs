@@ -44,6 +44,11 @@ impl<'l> Engine<'l> {
         Self { lanes, path, state: State::bare(lanes), block: YearBlock::new(lanes, with_detail) }
     }
 
+    /// The same engine, asked for the covered share of bands and basins, too.
+    pub fn with_cover(self) -> Self {
+        Self { block: self.block.with_cover(), ..self }
+    }
+
     /// The snow that is there.
     pub fn snow(&self) -> Snow {
         let State { ice, liquid, cold, .. } = &self.state;

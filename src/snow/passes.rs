@@ -106,8 +106,9 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_
     above: &[f64],
     below: &[f64],
     melting: &[f64],
-    refreezing: &[f64],
     holding: &[f64],
+    refreeze_share: &[f64],
+    refreeze_factor: &[f64],
     stores: StoreRows<'_>,
 ) {
     let n = ice.len();
@@ -116,7 +117,8 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_
     let (swe, net_melt) = (&mut swe[..n], &mut net_melt[..n]);
     let (outflow, bare_ground_rain) = (&mut outflow[..n], &mut bare_ground_rain[..n]);
     let (snow, rain, mean, above, below) = (&snow[..n], &rain[..n], &mean[..n], &above[..n], &below[..n]);
-    let (melting, holding, refreezing) = (&melting[..n], &holding[..n], &refreezing[..n]);
+    let (melting, holding) = (&melting[..n], &holding[..n]);
+    let (refreeze_share, refreeze_factor) = (&refreeze_share[..n], &refreeze_factor[..n]);
     let with_stores = if WITH_STORES { n } else { 0 };
     let (cold, sublimation) = (&mut cold[..with_stores], &mut sublimation[..with_stores]);
     let year_sublimation = &mut year_sublimation[..with_stores];
@@ -132,11 +134,12 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_
             melt_degrees_c: above[lane],
             freeze_degrees_c: below[lane],
             melt_factor: melting[lane],
-            refreeze_factor: refreezing[lane],
             sublimation_mm: if WITH_STORES { loss_mm[lane] + loss_of_snow[lane] * snow_mm } else { 0.0 },
         };
         let lane_const = LaneConst {
             holding_fraction: holding[lane],
+            refreeze_share: refreeze_share[lane],
+            refreeze_factor: refreeze_factor[lane],
             cold_per_mm_c: if WITH_STORES { cold_per_mm_c[lane] } else { 0.0 },
             cold_share: if WITH_STORES { cold_share[lane] } else { 0.0 },
         };

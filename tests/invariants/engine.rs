@@ -87,7 +87,11 @@ fn check_band(
                 ("bare-ground rain", block.bare_ground_rain_mm[at], expected.bare_ground_rain_mm),
                 ("sublimation", of_table(&block.sublimation_mm, at), expected.sublimation_mm),
                 ("cold content", of_lanes(&detail.cold_mm), expected.cold_mm),
-                ("covered share", block.covered_share(day, column), expected.covered_share),
+                (
+                    "covered share",
+                    block.covered_share(day, column).expect("asked for"),
+                    expected.covered_share,
+                ),
             ] {
                 assert_same(engine, naive, what, day + 1)?;
             }
@@ -126,7 +130,11 @@ fn check_basin(
                 ("basin rain", block.rain_mm[at], mean(|r| r.rain_mm)),
                 ("basin snow", block.snow_mm[at], mean(|r| r.snow_mm)),
                 ("basin sublimation", of_table(&block.sublimation_mm, at), mean(|r| r.sublimation_mm)),
-                ("basin cover", block.covered_share(day, block.mixes_at + mix), mean(|r| r.covered_share)),
+                (
+                    "basin cover",
+                    block.covered_share(day, block.mixes_at + mix).expect("asked for"),
+                    mean(|r| r.covered_share),
+                ),
             ] {
                 assert_same(engine, naive, what, day + 1)?;
             }

@@ -62,8 +62,11 @@ fn run(variation: f64, own_variation: Option<f64>, classes: usize) -> (Lanes, Ye
     };
     let lanes = Lanes::new(&[vec![spec(None, 0.75), spec(own_variation, 0.25)]]);
     let series = season();
-    let block =
-        Engine::new(&lanes, true).year(series.view(&series.years[0])).expect("a closed ledger").clone();
+    let block = Engine::new(&lanes, true)
+        .with_cover()
+        .year(series.view(&series.years[0]))
+        .expect("a closed ledger")
+        .clone();
     (lanes, block)
 }
 
@@ -90,7 +93,7 @@ fn errors(variation: f64, classes: usize) -> [f64; 2] {
     for day in 2..DAYS {
         let (covered, left_mm) = closed_form(variation, (day - 1) as f64 * MELT_MM_PER_DAY);
         let swe_mm = block.swe_mm[day * block.width + column];
-        largest[0] = largest[0].max((block.covered_share(day, column) - covered).abs());
+        largest[0] = largest[0].max((block.covered_share(day, column).expect("asked for") - covered).abs());
         largest[1] = largest[1].max((swe_mm - left_mm).abs() / SNOWFALL_MM);
     }
     largest

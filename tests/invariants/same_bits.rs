@@ -61,7 +61,8 @@ proptest! {
     /// Snow without variation is the plain band, whatever the number of classes; a cold store that never follows the weather
     /// and holds nothing, a loss of nothing and a factor of radiation of 0 are none.
     #[test]
-    fn options_of_nothing_are_none(scenario in scenarios(), classes in 2..8_usize) {
+    fn options_of_nothing_are_none(mut scenario in scenarios(), classes in 2..8_usize) {
+        scenario.snow.degree_day_factor_highest = scenario.snow.degree_day_factor_lowest;
         let series = scenario.climate.series();
         let changes = scenario.changes();
         let plain = Scenario::run(&scenario.lanes(&changes), &series, Path::Widest);
@@ -86,7 +87,7 @@ proptest! {
         let series = scenario.climate.series();
         let lanes = scenario.lanes(&scenario.changes());
         let with = Scenario::run(&lanes, &series, Path::Widest);
-        let mut engine = Engine::new(&lanes, false);
+        let mut engine = Engine::new(&lanes, false).with_cover();
         for (year, mut expected) in series.years.iter().zip(with) {
             if !year.follows {
                 engine.restart();

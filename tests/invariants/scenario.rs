@@ -225,7 +225,7 @@ impl Scenario {
 
     /// Runs the engine with all detail and hands over a copy of every year.
     pub fn run(lanes: &Lanes, series: &Series, path: Path) -> Vec<YearBlock> {
-        let mut engine = Engine::on_path(lanes, true, path);
+        let mut engine = Engine::on_path(lanes, true, path).with_cover();
         let mut blocks = Vec::new();
         for year in &series.years {
             if !year.follows {
