@@ -9,7 +9,8 @@ use super::block::{Detail, YearBlock};
 use super::lanes::{Lanes, ROW_MULTIPLE};
 use super::params::DegreeRule;
 use super::passes::{
-    StoreRows, diurnal_degrees_row, mean_degrees_row, mean_row, split_row, store_row, wet_bulb_row,
+    StoreRows, diurnal_degrees_row, mean_degrees_row, mean_row, patches_row, split_row, store_row,
+    wet_bulb_row,
 };
 use super::phase_rule::PhaseRule;
 use super::{linear_snow_fraction, s_curve_snow_fraction, step_snow_fraction, tanh_snow_fraction};
@@ -115,6 +116,9 @@ pub(super) fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, bloc
                 PhaseRule::SCurve { .. } => {
                     split(state, lanes, precipitation_mm, share, &mut fallen, s_curve_snow_fraction);
                 }
+            }
+            if lanes.has_patches() {
+                patches_row(fallen.snow, &mut state.input, &lanes.snowfall_multiplier);
             }
             from = first_with_any(&fallen.snow[..with_snow]);
             bare_rain_row(&mut state.bare_ground_rain, &fallen.rain[..from], bare_ground_rain);
@@ -234,8 +238,8 @@ fn split(
 ) {
     let (State { input, mean, wet_bulb, .. }, Fallen { rain, snow }) = (state, fallen);
     let told_by = if lanes.has_wet_bulb() { wet_bulb } else { mean };
-    let (warm, per_c, multiplier) = (&lanes.phase_warm_c, &lanes.phase_per_c, &lanes.snowfall_multiplier);
-    split_row(snow, rain, input, told_by, warm, per_c, factor, multiplier, precipitation_mm, snow_fraction);
+    let (warm, per_c) = (&lanes.phase_warm_c, &lanes.phase_per_c);
+    split_row(snow, rain, input, told_by, warm, per_c, factor, precipitation_mm, snow_fraction);
 }
 
 #[inline(always)]
@@ -288,9 +292,9 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_STORES: bool>(
         &state.melt_degrees[from..],
         &state.freeze_degrees[from..],
         &lanes.melt_factor[at.day.clone()][from..],
+        &lanes.degree_day_factor.as_ref().unwrap_or(&lanes.melt_factor)[at.day.clone()][from..],
         &lanes.holding_fraction[from..],
-        &lanes.refreeze_share[from..],
-        &lanes.refreeze_factor[from..],
+        &lanes.refreeze_fraction[from..],
         stores,
     );
 }

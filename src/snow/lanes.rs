@@ -54,6 +54,8 @@ pub struct Lanes {
     pub(super) snowfall_multiplier: Vec<f64>,
     /// `[day of year][lane]`, day 1 first: melt of a degree, mm per degC and day.
     pub(super) melt_factor: Vec<f64>,
+    /// `[day of year][lane]`: the part of it that is not the sun's; none without radiation, where it is the whole.
+    pub(super) degree_day_factor: Option<Vec<f64>>,
     /// Melt base temperature, degC.
     pub(super) melt_base_c: Vec<f64>,
     /// The rule's temperature, degC.
@@ -61,10 +63,7 @@ pub struct Lanes {
     /// The rule's slope, per degC.
     pub(super) phase_per_c: Vec<f64>,
     pub(super) holding_fraction: Vec<f64>,
-    /// Refreezing of a degree as a share of the melt factor.
-    pub(super) refreeze_share: Vec<f64>,
-    /// What stands in its place with radiation, mm per degC and day.
-    pub(super) refreeze_factor: Vec<f64>,
+    pub(super) refreeze_fraction: Vec<f64>,
     /// Pressure at which the wet bulb is taken, kPa; no lanes where the air's temperature tells rain from snow.
     pub(super) pressure_kpa: Vec<f64>,
     /// What the cold store and the loss to the air need; none without them.
@@ -110,12 +109,12 @@ impl Lanes {
             precipitation_factor: vec![0.0; 12 * width],
             snowfall_multiplier: row(),
             melt_factor: vec![0.0; 366 * width],
+            degree_day_factor: options.radiation.map(|_| vec![0.0; 366 * width]),
             melt_base_c: row(),
             phase_warm_c: row(),
             phase_per_c: row(),
             holding_fraction: row(),
-            refreeze_share: row(),
-            refreeze_factor: row(),
+            refreeze_fraction: row(),
             pressure_kpa: if options.wet_bulb { vec![standard_pressure_kpa(0.0); width] } else { Vec::new() },
             stores: (options.cold_content.is_some() || options.sublimation.is_some()).then(|| Stores {
                 loss_mm: vec![0.0; 12 * width],
@@ -128,14 +127,14 @@ impl Lanes {
         };
         for (group, specs) in groups.iter().enumerate() {
             for (place, spec) in specs.iter().enumerate() {
-                let (of_classes, melt_factors) = (spec.classes(), spec.melt_factors());
+                let (of_classes, factors) = (spec.classes(), spec.factors());
                 let of_class = 1.0 / of_classes.len() as f64;
                 for (class, multiplier) in of_classes.into_iter().enumerate() {
                     let lane = lanes.means.lane(group, place, class);
                     lanes.means.set_shares(group, place, class, spec.share, of_class);
                     lanes.snowfall_multiplier[lane] = multiplier;
                     lanes.set(lane, spec);
-                    lanes.set_factors(lane, spec, &melt_factors);
+                    lanes.set_factors(lane, &factors);
                     lanes.set_options(lane, spec);
                 }
             }
@@ -228,17 +227,17 @@ impl Lanes {
         self.melt_base_c[lane] = spec.snow.melt_base_c;
         (self.phase_warm_c[lane], self.phase_per_c[lane]) = spec.snow.rain_snow.numbers();
         self.holding_fraction[lane] = spec.snow.liquid_holding_fraction;
+        self.refreeze_fraction[lane] = spec.snow.refreeze_fraction;
     }
 
-    fn set_factors(&mut self, lane: usize, spec: &LaneSpec<'_>, melt_factors: &[f64]) {
-        for (day, factor) in melt_factors.iter().enumerate() {
-            self.melt_factor[day * self.width + lane] = *factor;
+    fn set_factors(&mut self, lane: usize, factors: &[Factors]) {
+        for (day, factors) in factors.iter().enumerate() {
+            let at = day * self.width + lane;
+            self.melt_factor[at] = factors.degree_day + factors.of_sun;
+            if let Some(degree_day) = &mut self.degree_day_factor {
+                degree_day[at] = factors.degree_day;
+            }
         }
-        let refreeze = spec.snow.refreeze_fraction;
-        (self.refreeze_share[lane], self.refreeze_factor[lane]) = match spec.snow.options.radiation {
-            None => (refreeze, 0.0),
-            Some(_) => (0.0, refreeze * spec.degree_day_factor(1)),
-        };
     }
 
     fn set_options(&mut self, lane: usize, spec: &LaneSpec<'_>) {
@@ -268,23 +267,27 @@ impl LaneSpec<'_> {
         if variation > 0.0 { class_multipliers(variation, patchiness.classes) } else { vec![1.0] }
     }
 
-    /// The degree-day factor on a calendar day of the year under the band's trees, mm per degC and day.
-    fn degree_day_factor(&self, day: u16) -> f64 {
-        canopy_share(self.ground.canopy_fraction) * degree_day_factor(self.snow, day)
-    }
-
-    /// What a degree melts on each calendar day of the year, mm per degC and day.
-    fn melt_factors(&self) -> Vec<f64> {
-        let (latitude_deg, Ground { slope_deg, aspect_deg, .. }) = (self.basin.latitude_deg, self.ground);
-        let Some(radiation) = self.snow.options.radiation else {
-            return (1..=366).map(|day| self.degree_day_factor(day)).collect();
-        };
-        let highest = highest_radiation(latitude_deg);
-        let canopy = canopy_share(self.ground.canopy_fraction);
-        let of_day = |day: u16| {
-            let relative = potential_radiation(latitude_deg, slope_deg, aspect_deg, day) / highest;
-            canopy * (degree_day_factor(self.snow, day) + radiation.factor_mm_per_c_day * relative)
+    /// What a degree melts on each calendar day of the year.
+    fn factors(&self) -> Vec<Factors> {
+        let (latitude_deg, ground) = (self.basin.latitude_deg, self.ground);
+        let canopy = canopy_share(ground.canopy_fraction);
+        let of_sun = self.snow.options.radiation.map(|radiation| {
+            let highest = highest_radiation(latitude_deg);
+            move |day| {
+                let potential = potential_radiation(latitude_deg, ground.slope_deg, ground.aspect_deg, day);
+                radiation.factor_mm_per_c_day * (potential / highest)
+            }
+        });
+        let of_day = |day: u16| Factors {
+            degree_day: canopy * degree_day_factor(self.snow, day),
+            of_sun: of_sun.map_or(0.0, |of_sun| canopy * of_sun(day)),
         };
         (1..=366).map(of_day).collect()
     }
+}
+
+/// The two parts of a day's melt factor under the band's trees, mm per degC and day.
+struct Factors {
+    degree_day: f64,
+    of_sun: f64,
 }

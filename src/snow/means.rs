@@ -97,8 +97,9 @@ impl Means {
         self.row_of(row, from, means, |value| value);
     }
 
-    /// The same of each lane's snow cover, from its SWE.
-    #[inline(always)]
+    /// The same of each lane's snow cover, from its SWE. Like the means of classes it stands apart, since code that the plain
+    /// day does not run slows it where the compiler puts it in between.
+    #[inline(never)]
     pub fn covered_row(&self, swe: &[f64], from: usize, means: &mut [f64]) {
         self.row_of(swe, from, means, cover);
     }
@@ -129,7 +130,7 @@ impl Means {
         }
     }
 
-    #[inline(always)]
+    #[inline(never)]
     fn band_row(&self, row: &[f64], bands: &mut [f64], read: impl Fn(f64) -> f64) {
         bands.fill(0.0);
         let classes = row.chunks_exact(self.groups).zip(self.class_shares.chunks_exact(self.groups));

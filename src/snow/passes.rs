@@ -64,21 +64,28 @@ pub(super) fn split_row(
     warm: &[f64],
     per_c: &[f64],
     factor: &[f64],
-    multiplier: &[f64],
     precipitation_mm: f64,
     snow_fraction: impl Fn(f64, f64, f64) -> f64,
 ) {
     let n = snow.len();
     let (rain, input, mean) = (&mut rain[..n], &mut input[..n], &mean[..n]);
     let (warm, per_c, factor) = (&warm[..n], &per_c[..n], &factor[..n]);
-    let multiplier = &multiplier[..n];
     for lane in 0..n {
         let fallen = precipitation_mm * factor[lane];
         let frozen = snow_fraction(mean[lane], warm[lane], per_c[lane]) * fallen;
-        let (of_snow, of_rain) = (frozen * multiplier[lane], fallen - frozen);
-        snow[lane] = of_snow;
-        rain[lane] = of_rain;
-        input[lane] += of_snow + of_rain;
+        snow[lane] = frozen;
+        rain[lane] = fallen - frozen;
+        input[lane] += fallen;
+    }
+}
+
+/// What each class gets of its band's snowfall, and its part of the ledger.
+#[inline(never)]
+pub(super) fn patches_row(snow: &mut [f64], input: &mut [f64], multiplier: &[f64]) {
+    for ((snow, input), multiplier) in snow.iter_mut().zip(input).zip(multiplier) {
+        let of_class = *snow * multiplier;
+        *input += of_class - *snow;
+        *snow = of_class;
     }
 }
 
@@ -106,9 +113,9 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_
     above: &[f64],
     below: &[f64],
     melting: &[f64],
+    degree_day: &[f64],
     holding: &[f64],
-    refreeze_share: &[f64],
-    refreeze_factor: &[f64],
+    refreezing: &[f64],
     stores: StoreRows<'_>,
 ) {
     let n = ice.len();
@@ -117,8 +124,8 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_
     let (swe, net_melt) = (&mut swe[..n], &mut net_melt[..n]);
     let (outflow, bare_ground_rain) = (&mut outflow[..n], &mut bare_ground_rain[..n]);
     let (snow, rain, mean, above, below) = (&snow[..n], &rain[..n], &mean[..n], &above[..n], &below[..n]);
-    let (melting, holding) = (&melting[..n], &holding[..n]);
-    let (refreeze_share, refreeze_factor) = (&refreeze_share[..n], &refreeze_factor[..n]);
+    let (melting, degree_day) = (&melting[..n], &degree_day[..n]);
+    let (holding, refreezing) = (&holding[..n], &refreezing[..n]);
     let with_stores = if WITH_STORES { n } else { 0 };
     let (cold, sublimation) = (&mut cold[..with_stores], &mut sublimation[..with_stores]);
     let year_sublimation = &mut year_sublimation[..with_stores];
@@ -134,12 +141,12 @@ pub(super) fn store_row<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_
             melt_degrees_c: above[lane],
             freeze_degrees_c: below[lane],
             melt_factor: melting[lane],
+            degree_day_factor: degree_day[lane],
             sublimation_mm: if WITH_STORES { loss_mm[lane] + loss_of_snow[lane] * snow_mm } else { 0.0 },
         };
         let lane_const = LaneConst {
             holding_fraction: holding[lane],
-            refreeze_share: refreeze_share[lane],
-            refreeze_factor: refreeze_factor[lane],
+            refreeze_fraction: refreezing[lane],
             cold_per_mm_c: if WITH_STORES { cold_per_mm_c[lane] } else { 0.0 },
             cold_share: if WITH_STORES { cold_share[lane] } else { 0.0 },
         };

@@ -29,6 +29,8 @@ pub struct LaneDay {
     pub freeze_degrees_c: f64,
     /// Melt factor of the day, mm per degC and day.
     pub melt_factor: f64,
+    /// Degree-day factor of the day: the melt factor without radiation.
+    pub degree_day_factor: f64,
     /// What the air could take of the snow, mm.
     pub sublimation_mm: f64,
 }
@@ -38,11 +40,8 @@ pub struct LaneDay {
 pub struct LaneConst {
     /// Liquid water that the pack holds, a fraction of its ice.
     pub holding_fraction: f64,
-    /// Refreezing per degree as a share of the melt factor: the refreeze fraction, where the melt factor is the degree-day
-    /// factor; 0 with radiation.
-    pub refreeze_share: f64,
-    /// Refreezing per degree with radiation, whose degree-day factor is the same all year, mm per degC and day; 0 without.
-    pub refreeze_factor: f64,
+    /// Refreezing per degree, a fraction of the degree-day factor.
+    pub refreeze_fraction: f64,
     /// Cold content of 1 mm of ice for each degree below 0, mm: [`COLD_PER_MM_C`], or 0 without a cold store.
     pub cold_per_mm_c: f64,
     /// Share of the difference between the pack's temperature and the air's that a day closes.
@@ -96,8 +95,7 @@ pub fn step<const WITH_STORES: bool>(pack: Pack, day: LaneDay, lane: LaneConst) 
     let ice_mm = ice_mm - melt_mm;
 
     let liquid_mm = pack.liquid_mm + (melt_mm + rain_mm);
-    let refreeze_factor = lane.refreeze_share * day.melt_factor + lane.refreeze_factor;
-    let can_freeze_mm = refreeze_factor * day.freeze_degrees_c;
+    let can_freeze_mm = lane.refreeze_fraction * day.degree_day_factor * day.freeze_degrees_c;
     let can_freeze_mm = if WITH_STORES { can_freeze_mm + cold_mm } else { can_freeze_mm };
     let refreeze_mm = if ice_mm > 0.0 { smaller(can_freeze_mm, liquid_mm) } else { 0.0 };
     let cold_mm = if WITH_STORES & (ice_mm > 0.0) { larger(cold_mm - refreeze_mm, 0.0) } else { 0.0 };

@@ -55,9 +55,6 @@ prop_compose! {
     ) -> Scenario {
         let mut scenario = scenario;
         scenario.snow.options = options;
-        if options.radiation.is_some() {
-            scenario.snow.degree_day_factor_highest = scenario.snow.degree_day_factor_lowest;
-        }
         if let Some((half_snow_at_c, mixed_range_c)) = s_curve {
             scenario.snow.rain_snow = PhaseRule::SCurve { half_snow_at_c, mixed_range_c };
         }
