@@ -1,5 +1,6 @@
 //! The command line as it is typed.
 
+use super::daily::WaterYears;
 use clap::{Args, Parser, Subcommand, ValueEnum};
 use std::io::IsTerminal;
 use std::path::PathBuf;
@@ -39,6 +40,12 @@ pub(super) enum Command {
     Daily {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
+        /// Draw these water years, too: 2011, or 2010-2012; needs --into
+        #[arg(long, value_name = "YEARS")]
+        draw_years: Option<WaterYears>,
+        /// Of which place: basin, a band by its number from the lowest, 1, or a site with observed snow by its name
+        #[arg(long, value_name = "PLACE", requires = "draw_years")]
+        draw_band: Option<String>,
     },
     /// Write station weather, day by day, as CSV: the record as realizations are made from it, or a realization
     Weather {

@@ -346,7 +346,7 @@ fn recipe_of(scenario: &Scenario) -> Recipe {
 }
 
 /// A word as a shell takes it.
-fn quoted(word: &str) -> String {
+pub(super) fn quoted(word: &str) -> String {
     let is_plain = |c: char| c.is_ascii_alphanumeric() || "-_./+,:@%".contains(c);
     if !word.is_empty() && word.chars().all(is_plain) {
         word.to_owned()

@@ -1,26 +1,38 @@
-//! `thawline daily`: the record as observed, day by day, and how near the model comes to observed snow.
+//! `thawline daily`: the record as observed, day by day, and how near the model comes to observed snow; some of its years drawn.
+
+mod picture;
+
+pub(super) use picture::{Asked, WaterYears};
 
 use super::arguments::Shared;
 use super::assemble::{Ready, assemble};
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::progress::{is_interrupted, mind_interrupts};
-use crate::figures::{Setting, of_sites};
+use crate::figures::{Setting, of_days, of_sites};
 use crate::fit::Comparison;
 use crate::perturb::MonthlyChange;
 use crate::report::{
     DailyError, Reader, ReportFile, comparison_json, comparison_words, daily_csv, daily_manifest_json,
     observed_tables, publish,
 };
+use crate::snow::Lanes;
+use picture::Picture;
 use std::io::{self, BufWriter, Write};
 use std::path::Path;
 
 /// Runs the command: to standard output, or into `daily.csv` of the folder that `--into` names.
-pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
+pub(super) fn run(path: &Path, asked: Option<&Asked>, shared: &Shared) -> Result<(), Failure> {
     if shared.json {
         return Err(Failure::CommandLine("--json is not for daily, whose output is a CSV table".to_owned()));
     }
+    if asked.is_some() && shared.into.is_none() {
+        return Err(Failure::CommandLine(
+            "--draw-years leaves a figure, and a figure needs a folder: add --into DIR".to_owned(),
+        ));
+    }
     let ready = assemble(path, shared)?;
+    let picture = asked.map(|asked| Picture::of(asked, &ready)).transpose()?;
     let lanes = ready.lanes(&[MonthlyChange::NONE]);
     let comparisons = ready.comparisons().map_err(|open| Failure::Ours(open.to_string()))?;
     if !shared.quiet {
@@ -32,12 +44,18 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         }
     }
     if let Some(into) = &shared.into {
+        let site = picture.as_ref().and_then(Picture::lanes_of_site);
+        let site = site.as_ref().map(|(name, lanes)| (*name, lanes));
         let mut table = Vec::new();
-        daily_csv(&lanes, &ready.weather, &mut table).map_err(failure)?;
+        daily_csv(&lanes, site, &ready.weather, &mut table).map_err(failure)?;
         let mut files = vec![("daily.csv".to_owned(), table)];
         files.extend(of_observed_snow(&ready, &comparisons)?);
+        if let Some(picture) = &picture {
+            files.extend(drawn(picture, &ready, &lanes, site.map(|(_, lanes)| lanes))?);
+        }
         let names: Vec<&str> = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
-        let manifest = daily_manifest_json(&ready.origin("daily", path, shared), &names);
+        let command = format!("daily{}", picture.as_ref().map_or("", Picture::flags));
+        let manifest = daily_manifest_json(&ready.origin(&command, path, shared), &names);
         let manifest = manifest.map_err(|error| Failure::Ours(error.to_string()))?;
         files.push(("run.json".to_owned(), manifest));
         mind_interrupts();
@@ -53,7 +71,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         return Ok(());
     }
     let mut out = BufWriter::with_capacity(1 << 16, io::stdout().lock());
-    daily_csv(&lanes, &ready.weather, &mut out).map_err(failure)?;
+    daily_csv(&lanes, None, &ready.weather, &mut out).map_err(failure)?;
     out.flush().map_err(|error| output::written(&error))?;
     if !shared.quiet {
         say(&comparisons, ready.reader());
@@ -73,15 +91,31 @@ fn of_observed_snow(ready: &Ready, comparisons: &[Comparison]) -> Result<Vec<Rep
     if comparisons.is_empty() {
         return Ok(Vec::new());
     }
-    let title = &ready.scenario.title;
-    let Reader { units, starts: water_year_starts } = ready.reader();
-    let setting = Setting { study_title: title, units, water_year_starts };
-    let mut files = observed_tables(comparisons, units);
-    let document = comparison_json(title, comparisons).map_err(|error| Failure::Ours(error.to_string()))?;
+    let setting = setting(ready);
+    let mut files = observed_tables(comparisons, setting.units);
+    let document = comparison_json(setting.study_title, comparisons)
+        .map_err(|error| Failure::Ours(error.to_string()))?;
     files.push(("comparison.json".to_owned(), document));
     let figures = of_sites(comparisons, &setting).into_iter();
     files.extend(figures.map(|(slug, svg)| (format!("figures/{slug}.svg"), svg.text.into_bytes())));
     Ok(files)
+}
+
+/// The years that were asked for, drawn.
+fn drawn(
+    picture: &Picture<'_>,
+    ready: &Ready,
+    bands: &Lanes,
+    of_site: Option<&Lanes>,
+) -> Result<Vec<ReportFile>, Failure> {
+    let days = picture.days(bands, of_site).map_err(|open| Failure::Ours(open.to_string()))?;
+    let figures = of_days(&days, &setting(ready)).into_iter();
+    Ok(figures.map(|(slug, svg)| (format!("figures/{slug}.svg"), svg.text.into_bytes())).collect())
+}
+
+fn setting(ready: &Ready) -> Setting<'_> {
+    let Reader { units, starts: water_year_starts } = ready.reader();
+    Setting { study_title: &ready.scenario.title, units, water_year_starts }
 }
 
 fn failure(error: DailyError) -> Failure {

@@ -36,7 +36,10 @@ pub fn run() -> u8 {
     let shared = arguments.shared;
     let result = match arguments.command {
         Command::Study { scenario } => study::run(&scenario, &shared),
-        Command::Daily { scenario } => daily::run(&scenario, &shared),
+        Command::Daily { scenario, draw_years, draw_band } => {
+            let asked = draw_years.map(|years| daily::Asked { years, place: draw_band });
+            daily::run(&scenario, asked.as_ref(), &shared)
+        }
         Command::Weather { scenario, realization } => weather::run(&scenario, realization, &shared),
         Command::Check { scenario, weather } => check::run(&scenario, weather, &shared),
         Command::Start { folder } => start::run(&folder, &shared),

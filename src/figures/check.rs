@@ -2,6 +2,7 @@
 
 mod bands;
 mod comparisons;
+mod days;
 mod records;
 mod studies;
 mod through_year;

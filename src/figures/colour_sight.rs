@@ -108,6 +108,9 @@ fn text_and_lines_stand_out_from_paper_and_band() {
             }
         }
     }
+    for bar in [theme::SNOWFALL, theme::RAIN, theme::MELT, theme::MODELLED] {
+        assert!(contrast(bar, theme::PAPER) >= 3.0, "{bar:?}");
+    }
     for lettering in [theme::TITLE, theme::NAME, theme::LABEL, theme::NOTE] {
         assert!(lettering.size_px >= 12.0, "{lettering:?}");
     }

@@ -6,6 +6,7 @@
 mod apart;
 mod axes;
 mod backend;
+mod daily;
 mod generator_sheet;
 mod headline;
 mod labels;
@@ -21,6 +22,7 @@ mod sheet;
 mod shown;
 mod swe_by_band;
 mod swe_by_level;
+mod swe_pair;
 mod swe_through_year;
 mod text_width;
 pub mod theme;
@@ -37,7 +39,7 @@ pub use text_width::text_width;
 
 use crate::calendar::WaterYearStart;
 use crate::findings::Findings;
-use crate::fit::Comparison;
+use crate::fit::{Comparison, PlaceDays};
 use crate::units::UnitSystem;
 
 /// A figure.
@@ -106,6 +108,29 @@ pub fn of_sites(comparisons: &[Comparison], setting: &Setting<'_>) -> Vec<(Strin
         }
     }
     drawn
+}
+
+/// A figure of a place's days.
+#[derive(Debug, Clone, Copy)]
+pub struct DaysFigure {
+    /// Its name in files and addresses.
+    pub slug: &'static str,
+    /// The question that it answers.
+    pub question: &'static str,
+    /// Draws it; nothing without a year.
+    pub draw: fn(&PlaceDays, &Setting<'_>) -> Option<Svg>,
+}
+
+/// Every figure of a place's days.
+pub const DAYS_FIGURES: [DaysFigure; 1] = [daily::FIGURE];
+
+/// More water years than this are not told apart in one of them.
+pub const MOST_YEARS_OF_DAYS: usize = 5;
+
+/// Draws every figure of a place's days, each with its name.
+pub fn of_days(days: &PlaceDays, setting: &Setting<'_>) -> Vec<(&'static str, Svg)> {
+    let draw = |figure: &DaysFigure| Some((figure.slug, (figure.draw)(days, setting)?));
+    DAYS_FIGURES.iter().filter_map(draw).collect()
 }
 
 /// What a figure needs to know beside the findings.

@@ -7,8 +7,9 @@ mod words;
 use super::axes::AmountTicks;
 use super::page::Paragraphs;
 use super::scales;
-use super::sheet::{Drawn, HPos, Sheet, Stroke, VPos};
-use super::theme::{INK, LABEL, MARGIN_PX, MODELLED, NAME, WIDTH_PX};
+use super::sheet::{Drawn, HPos, Sheet, VPos};
+use super::swe_pair;
+use super::theme::{MARGIN_PX, NAME};
 use super::{Setting, SiteFigure, Svg};
 use crate::fit::{ComparedYear, Comparison};
 use crate::observed::Kind;
@@ -28,8 +29,6 @@ const MOST_YEARS: usize = 40;
 const STEPS: usize = 4;
 /// Height of the line that names axis and marks, px.
 const NAMES_PX: f64 = 30.0;
-/// Length of a line in the key, px.
-const SAMPLE_PX: f64 = 22.0;
 
 fn draw(comparison: &Comparison, slug: &str, setting: &Setting<'_>) -> Option<Svg> {
     let years = &comparison.by_year;
@@ -61,7 +60,7 @@ fn paint(
     heading.write(&sheet, MARGIN_PX)?;
     let axis = format!("SWE as the day begins, {}", depth.word);
     sheet.write(&axis, (MARGIN_PX, names + 14.0), NAME, HPos::Left, VPos::Bottom)?;
-    sheet.group("marks", || marks(&sheet, kind, names + 14.0))?;
+    sheet.group("marks", || swe_pair::name(&sheet, Some(kind), names + 14.0))?;
     for (at, year) in years.iter().enumerate() {
         let panel = Panel { place: grid.place(at), kind, year, ticks: &ticks, depth };
         sheet.group("year", || panel.draw(&sheet))?;
@@ -74,22 +73,4 @@ fn paint(
 fn highest(years: &[ComparedYear]) -> f64 {
     let days = years.iter().flat_map(|year| &year.days);
     days.map(|day| day.observed_mm.unwrap_or(0.0).max(day.modelled_mm)).fold(0.0, f64::max)
-}
-
-/// Names the marks once, from the right.
-fn marks(sheet: &Sheet, kind: Kind, baseline: f64) -> Drawn {
-    let mut right = WIDTH_PX - MARGIN_PX;
-    let middle = baseline - 4.5;
-    for (name, is_model) in [("modelled", true), ("observed", false)] {
-        sheet.write(name, (right, baseline), LABEL, HPos::Right, VPos::Bottom)?;
-        let to = right - LABEL.width(name) - 7.0;
-        let line = [(to - SAMPLE_PX, middle), (to, middle)];
-        match (is_model, kind) {
-            (true, _) => sheet.line(&line, Stroke::solid(MODELLED, panel::MODELLED_PX))?,
-            (false, Kind::Pillow) => sheet.line(&line, Stroke::solid(INK, panel::OBSERVED_PX))?,
-            (false, Kind::Course) => sheet.dot((to - 6.0, middle), panel::DOT_PX, INK)?,
-        }
-        right = to - SAMPLE_PX - 18.0;
-    }
-    Ok(())
 }

@@ -25,6 +25,13 @@ pub const BAND: RGBColor = RGBColor(0xe9, 0xef, 0xf2);
 /// What the model makes of the record, beside what was observed in ink.
 pub const MODELLED: RGBColor = WARMER[0];
 
+/// Snow that falls, rain, and melt, day by day; each in a strip that is named.
+pub const SNOWFALL: RGBColor = EDGE;
+/// Rain.
+pub const RAIN: RGBColor = COLDER[1];
+/// Melt.
+pub const MELT: RGBColor = WARMER[2];
+
 /// The wettest year; lighter than the driest, so that they part in grey.
 pub const WET: RGBColor = WARMER[0];
 /// The driest year.

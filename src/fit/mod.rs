@@ -1,14 +1,16 @@
 //! The model against observed snow (method, section 12): how well the parameters in use reproduce what was measured.
 //!
 //! `scores` holds the published measures of agreement, `site` runs the model where the snow was measured, `year` takes
-//! one water year of both, `comparison` puts a site's years together.
+//! one water year of both, `comparison` puts a site's years together. `place` takes any place day by day.
 
 mod comparison;
+mod place;
 mod scores;
 mod site;
 mod year;
 
 pub use comparison::{Bias, Comparison, DateError, SurveyBias};
+pub use place::{ObservedAt, Place, PlaceDays, PlaceYear, place_years};
 pub use scores::{KlingGupta, Pair, kling_gupta, nash_sutcliffe};
-pub use site::{Model, Site, compare};
+pub use site::{Model, Site, compare, site_lanes};
 pub use year::{ComparedYear, DayPair, SurveyPair};

@@ -9,6 +9,7 @@ use crate::perturb::MonthlyChange;
 use crate::season::SeasonSettings;
 use crate::snow::{Engine, LaneSpec, Lanes, OpenLedger, SnowParams, YearBlock};
 use crate::weather::{Series, YearSpan};
+use chrono::NaiveDate;
 
 /// A site with observed snow.
 #[derive(Debug, Clone, Copy)]
@@ -36,15 +37,8 @@ pub struct Model<'a> {
     pub season: &'a SeasonSettings,
 }
 
-/// Runs the model without any warming at the elevation of every site, by the basin's gradients, and compares S(d) with
-/// what was observed on every day with a reading of the years in use. Years after a gap start bare.
-///
-/// # Errors
-/// A ledger that does not close.
-pub fn compare(sites: &[Site<'_>], model: &Model<'_>) -> Result<Vec<Comparison>, OpenLedger> {
-    if sites.is_empty() {
-        return Ok(Vec::new());
-    }
+/// The model without any warming at the elevation of every site, by the basin's gradients: a lane each.
+pub fn site_lanes(sites: &[Site<'_>], model: &Model<'_>) -> Lanes {
     let snow = model.snow.at_a_point();
     let specs = sites.iter().map(|site| LaneSpec {
         basin: model.basin,
@@ -56,7 +50,19 @@ pub fn compare(sites: &[Site<'_>], model: &Model<'_>) -> Result<Vec<Comparison>,
         snow: &snow,
         share: 1.0 / sites.len() as f64,
     });
-    let lanes = Lanes::new(&[specs.collect()]);
+    Lanes::new(&[specs.collect()])
+}
+
+/// Runs the model at every site and compares S(d) with what was observed on every day with a reading of the years in use.
+/// Years after a gap start bare.
+///
+/// # Errors
+/// A ledger that does not close.
+pub fn compare(sites: &[Site<'_>], model: &Model<'_>) -> Result<Vec<Comparison>, OpenLedger> {
+    if sites.is_empty() {
+        return Ok(Vec::new());
+    }
+    let lanes = site_lanes(sites, model);
     let mut engine = Engine::new(&lanes, false);
     let mut years: Vec<Vec<ComparedYear>> = vec![Vec::new(); sites.len()];
     engine.years(model.weather, |span, block| {
@@ -86,18 +92,31 @@ fn compare_year(
     column: usize,
     season: &SeasonSettings,
 ) -> Option<ComparedYear> {
-    let states = &site.observations.states;
-    let from = states.partition_point(|state| state.date < span.first);
-    let mut days: Vec<DayPair> = (0..block.days)
-        .map(|day| DayPair { observed_mm: None, modelled_mm: block.row(&block.swe_mm, day)[column] })
-        .collect();
-    for state in &states[from..] {
-        match days.get_mut(days_between(span.first, state.date)) {
-            Some(day) => day.observed_mm = Some(state.swe_mm),
-            None => break,
-        }
-    }
+    let observed = observed_days(Some(site.observations), span.first, block.days);
+    let days = observed.into_iter().enumerate().map(|(day, observed_mm)| DayPair {
+        observed_mm,
+        modelled_mm: block.row(&block.swe_mm, day)[column],
+    });
+    let days: Vec<DayPair> = days.collect();
     let has_any = days.iter().any(|day| day.observed_mm.is_some());
     let kind = site.observations.kind;
     has_any.then(|| ComparedYear::of(span.water_year, span.first, days, kind, &season.survey_dates))
+}
+
+/// What was observed as each day of a year begins, mm.
+pub(super) fn observed_days(
+    observations: Option<&Observations>,
+    first: NaiveDate,
+    days: usize,
+) -> Vec<Option<f64>> {
+    let mut observed = vec![None; days];
+    let states = observations.map_or(&[][..], |observations| &observations.states);
+    let from = states.partition_point(|state| state.date < first);
+    for state in &states[from..] {
+        match observed.get_mut(days_between(first, state.date)) {
+            Some(day) => *day = Some(state.swe_mm),
+            None => break,
+        }
+    }
+    observed
 }

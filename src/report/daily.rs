@@ -2,7 +2,7 @@
 
 use crate::calendar::date_of;
 use crate::snow::{Detail, Engine, Lanes, OpenLedger, YearBlock};
-use crate::weather::{Series, YearView};
+use crate::weather::{Series, YearSpan, YearView};
 use std::io::{self, Write};
 use thiserror::Error;
 
@@ -55,15 +55,23 @@ fn added(lanes: &Lanes) -> Vec<(&'static str, Added)> {
     columns
 }
 
-/// Runs the record and writes its days: bands by their number from the lowest, 1, then the basin mean, area-weighted.
+/// Runs the record and writes its days: bands by their number from the lowest, 1, then the basin mean, area-weighted,
+/// then a site by its name, where one is given with a lane of its own.
 ///
 /// Numbers are written in the shortest form that reads back exactly. `lanes` holds one group: the bands. Years after a
 /// gap start bare. Options add columns behind those that every table has.
 ///
 /// # Errors
 /// A ledger that does not close, or what `into` says.
-pub fn daily_csv(lanes: &Lanes, weather: &Series, into: &mut impl Write) -> Result<(), DailyError> {
+pub fn daily_csv(
+    lanes: &Lanes,
+    site: Option<(&str, &Lanes)>,
+    weather: &Series,
+    into: &mut impl Write,
+) -> Result<(), DailyError> {
     let mut engine = Engine::new(lanes, true);
+    let mut site =
+        site.map(|(name, lanes)| AtSite { name: cell(name), lanes, engine: Engine::new(lanes, true) });
     let added = added(lanes);
     write!(into, "{HEADER}")?;
     for (name, _) in &added {
@@ -71,20 +79,59 @@ pub fn daily_csv(lanes: &Lanes, weather: &Series, into: &mut impl Write) -> Resu
     }
     writeln!(into)?;
     engine.years(weather, |span, block| {
-        let Some(detail) = &block.detail else { return Ok(()) };
         let view = weather.view(span);
+        let at_site = match &mut site {
+            Some(site) => Some(site.year(span, view)?),
+            None => None,
+        };
         for day in 0..block.days {
             let date = date_of(block.first, day + 1);
-            let now = Day { lanes, block, detail, weather: &view, day };
+            let Some(now) = Day::of(lanes, block, &view, day) else { return Ok(()) };
             for band in 0..lanes.places() {
                 write!(into, "{date},{}", band + 1)?;
                 now.write(into, &added, Of::Band(band))?;
             }
             write!(into, "{date},basin")?;
             now.write(into, &added, Of::Basin)?;
+            if let Some((name, lanes, block)) = &at_site
+                && let Some(now) = Day::of(lanes, block, &view, day)
+            {
+                write!(into, "{date},{name}")?;
+                now.write(into, &added, Of::Band(0))?;
+            }
         }
         Ok(())
     })
+}
+
+/// A site with a lane of its own.
+struct AtSite<'l> {
+    name: String,
+    lanes: &'l Lanes,
+    engine: Engine<'l>,
+}
+
+impl<'l> AtSite<'l> {
+    /// Runs its next year.
+    fn year(
+        &mut self,
+        span: &YearSpan,
+        view: YearView<'_>,
+    ) -> Result<(&str, &'l Lanes, &YearBlock), OpenLedger> {
+        if !span.follows {
+            self.engine.restart();
+        }
+        Ok((&self.name, self.lanes, self.engine.year(view)?))
+    }
+}
+
+/// A text as a cell, in quotes where it has to be.
+fn cell(text: &str) -> String {
+    if text.contains([',', '"', '\n', '\r']) {
+        format!("\"{}\"", text.replace('"', "\"\""))
+    } else {
+        text.to_owned()
+    }
 }
 
 /// What a row is of.
@@ -104,7 +151,13 @@ struct Day<'a> {
     day: usize,
 }
 
-impl Day<'_> {
+impl<'a> Day<'a> {
+    /// None where the block has no detail.
+    fn of(lanes: &'a Lanes, block: &'a YearBlock, weather: &'a YearView<'a>, day: usize) -> Option<Self> {
+        let detail = block.detail.as_ref()?;
+        Some(Self { lanes, block, detail, weather, day })
+    }
+
     fn write(&self, into: &mut impl Write, added: &[(&str, Added)], of: Of) -> io::Result<()> {
         let (block, detail) = (self.block, self.detail);
         let [ice, liquid] = [&detail.ice_mm, &detail.liquid_mm].map(|table| self.of_lanes(table, of));

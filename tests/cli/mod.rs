@@ -5,6 +5,7 @@ mod by_elevation;
 mod closed_form;
 mod corpus;
 mod data_faults;
+mod drawn_days;
 mod drawn_weather;
 mod generator_sheet;
 mod gradients;

@@ -1,9 +1,9 @@
 //! One water year: observed and modelled SWE through its days.
 
 use super::super::axes::AmountTicks;
-use super::super::sheet::{Drawn, HPos, Plot, Px, Sheet, Stroke, VPos};
-use super::super::theme::{BAND, EDGE, INK, LABEL, MODELLED, NAME, NOTE};
-use super::super::thin::{TOLERANCE_PX, thinned};
+use super::super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
+use super::super::swe_pair;
+use super::super::theme::{BAND, EDGE, LABEL, NAME, NOTE};
 use super::grid::Place;
 use super::words::score;
 use crate::calendar::{MONTHS, date_of};
@@ -12,12 +12,6 @@ use crate::observed::Kind;
 use crate::units::Unit;
 use chrono::Datelike;
 
-/// Width of the modelled line, px.
-pub(super) const MODELLED_PX: f64 = 1.6;
-/// Width of the observed line, px; it shows on both sides of the modelled one where they meet.
-pub(super) const OBSERVED_PX: f64 = 2.6;
-/// Radius of a survey's dot, px.
-pub(super) const DOT_PX: f64 = 2.8;
 /// Every third month is named but the water year's first.
 const MONTHS_APART: usize = 3;
 
@@ -38,14 +32,7 @@ impl Panel<'_> {
         let plot = sheet.plot((left, top), (right, bottom), 1.0..days + 1.0, 0.0..self.ticks.top())?;
         self.title(sheet)?;
         self.axes(sheet, &plot)?;
-        self.observed(sheet, &plot)?;
-        let modelled = (1..)
-            .zip(&self.year.days)
-            .map(|(day, pair)| plot.at(f64::from(day), self.depth.of(pair.modelled_mm)));
-        sheet.line(
-            &thinned(&modelled.collect::<Vec<Px>>(), TOLERANCE_PX),
-            Stroke::solid(MODELLED, MODELLED_PX),
-        )
+        swe_pair::draw(sheet, &plot, &self.year.days, Some(self.kind), self.depth)
     }
 
     /// The year and how well it is reproduced.
@@ -87,24 +74,5 @@ impl Panel<'_> {
             }
         }
         sheet.line(&[(left, bottom), (right, bottom)], Stroke::solid(EDGE, 1.0))
-    }
-
-    /// A dot a survey; a line through the days of a pillow, broken where there is no reading.
-    fn observed(&self, sheet: &Sheet, plot: &Plot) -> Drawn {
-        let days = (1..).zip(&self.year.days);
-        let places: Vec<Option<Px>> = days
-            .map(|(day, pair)| pair.observed_mm.map(|swe_mm| plot.at(f64::from(day), self.depth.of(swe_mm))))
-            .collect();
-        if self.kind == Kind::Course {
-            return places.into_iter().flatten().try_for_each(|place| sheet.dot(place, DOT_PX, INK));
-        }
-        for run in places.split(Option::is_none) {
-            match run.iter().copied().flatten().collect::<Vec<Px>>().as_slice() {
-                [] => {}
-                [alone] => sheet.dot(*alone, OBSERVED_PX / 2.0, INK)?,
-                line => sheet.line(&thinned(line, TOLERANCE_PX), Stroke::solid(INK, OBSERVED_PX))?,
-            }
-        }
-        Ok(())
     }
 }
