@@ -172,7 +172,7 @@ fn the_wet_bulb_tells_rain_from_snow() {
 fn snow_that_never_goes_is_named_and_can_be_left_behind() {
     let carried = |more: &str| {
         let basin = with(&format!(
-            "[snow]\ndegree_day_factor_mm_per_c_day = {{ lowest = 0, highest = 0.3 }}\n{more}"
+            "[snow]\ndegree_day_factor_mm_per_c_day = {{ lowest = 0, highest = 0.05 }}\n{more}"
         ));
         let swe = column(&basin, "2", "swe_mm");
         let page = {

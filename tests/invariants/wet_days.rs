@@ -83,7 +83,12 @@ proptest! {
             prop_assert!((after - factor * before).abs() <= 1e-9 * before, "month {month}: {after}, {factor} of {before}");
         }
         prop_assert!(changed.precipitation_mm.iter().all(|mm| *mm >= 0.0));
-        let rest = |series: &Series| Series { precipitation_mm: Vec::new(), ..series.clone() };
+        // A day that becomes wet takes the air of the wet day whose amount it takes.
+        let rest = |series: &Series| Series {
+            precipitation_mm: Vec::new(),
+            relative_humidity_pct: Vec::new(),
+            ..series.clone()
+        };
         prop_assert_eq!(rest(&plain), rest(&changed));
         for (number, year) in changed.years.iter().enumerate() {
             let same = changed.years[..number].iter().find(|before| before.water_year == year.water_year);
