@@ -111,6 +111,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 canopy: true,
                 variation: scenario.snow.options.patchiness.is_some(),
             }));
+            unlikely.extend(scenario.warming.warming.unlikely_in(&basin));
             unlikely
                 .extend(baseline.iter().flat_map(|baseline| baseline.unlikely(scenario.weather.detrend_to)));
             let yearly_mm = basin.precipitation_ratio(station_m) * mean_yearly_mm(&weather);
