@@ -58,8 +58,8 @@ proptest! {
         }
     }
 
-    /// Snow without variation is the plain band, whatever the number of classes; a cold store that never follows the weather
-    /// and holds nothing, a loss of nothing and a factor of radiation of 0 are none.
+    /// Snow without variation is the plain band, whatever the number of classes; a loss of nothing and a factor of
+    /// radiation of 0 are none.
     #[test]
     fn options_of_nothing_are_none(scenario in scenarios(), classes in 2..8_usize) {
         let series = scenario.climate.series();
