@@ -8,6 +8,7 @@ mod golden;
 mod invariants;
 mod naive;
 mod naive_season;
+mod parameters;
 mod plausibility;
 mod record;
 mod vectors;

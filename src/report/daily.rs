@@ -42,8 +42,10 @@ fn added(lanes: &Lanes) -> Vec<(&'static str, Added)> {
     if lanes.has_patches() {
         columns.push(("covered_share", Added::Covered));
     }
-    if lanes.has_stores() {
+    if lanes.has_cold_content() {
         columns.push(("cold_content_mm", Added::Detail(|detail| &detail.cold_mm)));
+    }
+    if lanes.has_sublimation() {
         columns.push(("sublimation_mm", Added::Sublimation));
     }
     if lanes.has_wet_bulb() {

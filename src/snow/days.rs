@@ -68,8 +68,33 @@ impl State {
 }
 
 /// Runs a year on the snow of `state`, and leaves it in the block.
+///
+/// A year has two compiled forms: in the plain one there are no options and no detail, and so its days run no slower for what
+/// they do not use.
 #[inline(always)]
 pub(super) fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, block: &mut YearBlock) {
+    if lanes.has_options() || block.detail.is_some() {
+        run_year::<false>(lanes, weather, state, block);
+    } else {
+        run_year::<true>(lanes, weather, state, block);
+    }
+}
+
+#[inline(always)]
+fn run_year<const IS_PLAIN: bool>(
+    lanes: &Lanes,
+    weather: &YearView<'_>,
+    state: &mut State,
+    block: &mut YearBlock,
+) {
+    let keeps_detail = !IS_PLAIN && block.detail.is_some();
+    let has_patches = !IS_PLAIN && lanes.has_patches();
+    let has_stores = !IS_PLAIN && lanes.has_stores();
+    let has_wet_bulb = !IS_PLAIN && lanes.has_wet_bulb();
+    let degree_day_factor = match &lanes.degree_day_factor {
+        Some(without_sun) if !IS_PLAIN => without_sun,
+        _ => &lanes.melt_factor,
+    };
     let (width, row_width) = (lanes.width, block.width);
     begin_swe(state, &mut block.swe_mm[..width]);
     for (day, precipitation_mm) in weather.precipitation_mm.iter().copied().enumerate() {
@@ -91,33 +116,35 @@ pub(super) fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, bloc
         let month = month_of(weather, day, width);
         let is_wet = precipitation_mm > 0.0;
 
-        let mean_from = if is_wet || block.detail.is_some() { 0 } else { with_snow };
+        let mean_from = if is_wet || keeps_detail { 0 } else { with_snow };
         let offset = &lanes.mean_offset_c[month.clone()];
         mean_row(&mut state.mean[mean_from..], weather.mean_c[day], &offset[mean_from..]);
         let mut from = with_snow;
         if is_wet {
             let share = &lanes.precipitation_factor[month.clone()];
-            if lanes.has_wet_bulb() {
+            if has_wet_bulb {
                 let humidity_pct = weather.relative_humidity_pct[day];
                 wet_bulb_row(&mut state.wet_bulb, &state.mean, &lanes.pressure_kpa, humidity_pct);
             }
+            let State { input, mean, wet_bulb, .. } = &mut *state;
+            let told_by = if has_wet_bulb { &*wet_bulb } else { &*mean };
+            let fallen = &mut fallen;
             match lanes.phase {
                 PhaseRule::Linear { .. } => {
-                    split(state, lanes, precipitation_mm, share, &mut fallen, linear_snow_fraction);
+                    split(fallen, input, lanes, told_by, precipitation_mm, share, linear_snow_fraction);
                 }
                 PhaseRule::Step { .. } => {
-                    split(state, lanes, precipitation_mm, share, &mut fallen, |mean, warm, _| {
-                        step_snow_fraction(mean, warm)
-                    });
+                    let snow_fraction = |mean, warm, _| step_snow_fraction(mean, warm);
+                    split(fallen, input, lanes, told_by, precipitation_mm, share, snow_fraction);
                 }
                 PhaseRule::Tanh => {
-                    split(state, lanes, precipitation_mm, share, &mut fallen, tanh_snow_fraction);
+                    split(fallen, input, lanes, told_by, precipitation_mm, share, tanh_snow_fraction);
                 }
                 PhaseRule::SCurve { .. } => {
-                    split(state, lanes, precipitation_mm, share, &mut fallen, s_curve_snow_fraction);
+                    split(fallen, input, lanes, told_by, precipitation_mm, share, s_curve_snow_fraction);
                 }
             }
-            if lanes.has_patches() {
+            if has_patches {
                 patches_row(fallen.snow, &mut state.input, &lanes.snowfall_multiplier);
             }
             from = first_with_any(&fallen.snow[..with_snow]);
@@ -131,7 +158,14 @@ pub(super) fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, bloc
         }
         let half_range_offset = &lanes.half_range_offset_c[month];
         degrees_row(state, lanes, from, weather.half_range_c[day], half_range_offset);
-        let at = Calendar { month: month_of(weather, day, width), day: day_of_year(weather, day, width) };
+        let calendar_day = (usize::from(weather.day_of_year[day]) - 1) * width;
+        let calendar_day = calendar_day..calendar_day + width;
+        let today = Today {
+            fallen,
+            melt_factor: &lanes.melt_factor[calendar_day.clone()],
+            degree_day_factor: &degree_day_factor[calendar_day],
+            month: month_of(weather, day, width),
+        };
         let next_swe = &mut after[..width];
         for table in [&mut *next_swe, &mut *net_melt, &mut *outflow] {
             table[..from].fill(0.0);
@@ -139,18 +173,17 @@ pub(super) fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, bloc
         let bare_losses = from.min(sublimation.len());
         sublimation[..bare_losses].fill(0.0);
         let out = Out { swe: next_swe, net_melt, outflow, bare_ground_rain, sublimation };
-        let keeps = block.detail.is_some();
-        match (lanes.has_stores(), keeps, is_wet) {
-            (false, false, true) => store::<true, false, false>(state, lanes, from, &at, &fallen, out),
-            (false, false, false) => store::<false, false, false>(state, lanes, from, &at, &fallen, out),
-            (false, true, true) => store::<true, true, false>(state, lanes, from, &at, &fallen, out),
-            (false, true, false) => store::<false, true, false>(state, lanes, from, &at, &fallen, out),
-            (true, false, true) => store::<true, false, true>(state, lanes, from, &at, &fallen, out),
-            (true, false, false) => store::<false, false, true>(state, lanes, from, &at, &fallen, out),
-            (true, true, true) => store::<true, true, true>(state, lanes, from, &at, &fallen, out),
-            (true, true, false) => store::<false, true, true>(state, lanes, from, &at, &fallen, out),
+        match (has_stores, keeps_detail, is_wet) {
+            (false, false, true) => store::<true, false, false>(state, lanes, from, &today, out),
+            (false, false, false) => store::<false, false, false>(state, lanes, from, &today, out),
+            (false, true, true) => store::<true, true, false>(state, lanes, from, &today, out),
+            (false, true, false) => store::<false, true, false>(state, lanes, from, &today, out),
+            (true, false, true) => store::<true, false, true>(state, lanes, from, &today, out),
+            (true, false, false) => store::<false, false, true>(state, lanes, from, &today, out),
+            (true, true, true) => store::<true, true, true>(state, lanes, from, &today, out),
+            (true, true, false) => store::<false, true, true>(state, lanes, from, &today, out),
         }
-        if let Some(detail) = &mut block.detail {
+        if let (true, Some(detail)) = (keeps_detail, &mut block.detail) {
             state.melt[..from].fill(0.0);
             state.refreeze[..from].fill(0.0);
             detail.keep(day, state);
@@ -162,7 +195,7 @@ pub(super) fn run(lanes: &Lanes, weather: &YearView<'_>, state: &mut State, bloc
         lanes.means.row(net_melt, from, mean_net_melt);
         lanes.means.row(outflow, from, mean_outflow);
         lanes.means.row(bare_ground_rain, if is_wet { 0 } else { width }, mean_bare_ground_rain);
-        if lanes.has_stores() {
+        if has_stores {
             lanes.means.row(sublimation, from, mean_sublimation);
         }
     }
@@ -187,20 +220,18 @@ struct Out<'b> {
     sublimation: &'b mut [f64],
 }
 
-/// Where a day's rows stand in tables by month and by day of the year.
-struct Calendar {
+/// What a day brings to the store, and the lanes' rows of it.
+struct Today<'d> {
+    fallen: Fallen<'d>,
+    melt_factor: &'d [f64],
+    degree_day_factor: &'d [f64],
+    /// Where the month's rows stand in tables by month.
     month: Range<usize>,
-    day: Range<usize>,
 }
 
 fn month_of(weather: &YearView<'_>, day: usize, width: usize) -> Range<usize> {
     let month = usize::from(weather.month[day]) * width;
     month..month + width
-}
-
-fn day_of_year(weather: &YearView<'_>, day: usize, width: usize) -> Range<usize> {
-    let day = (usize::from(weather.day_of_year[day]) - 1) * width;
-    day..day + width
 }
 
 /// SWE of every lane as the year begins.
@@ -229,15 +260,15 @@ fn bare_rain_row(year_bare: &mut [f64], rain: &[f64], bare_ground_rain: &mut [f6
 
 #[inline(always)]
 fn split(
-    state: &mut State,
+    fallen: &mut Fallen<'_>,
+    input: &mut [f64],
     lanes: &Lanes,
+    told_by: &[f64],
     precipitation_mm: f64,
     factor: &[f64],
-    fallen: &mut Fallen<'_>,
     snow_fraction: impl Fn(f64, f64, f64) -> f64,
 ) {
-    let (State { input, mean, wet_bulb, .. }, Fallen { rain, snow }) = (state, fallen);
-    let told_by = if lanes.has_wet_bulb() { wet_bulb } else { mean };
+    let Fallen { rain, snow } = fallen;
     let (warm, per_c) = (&lanes.phase_warm_c, &lanes.phase_per_c);
     split_row(snow, rain, input, told_by, warm, per_c, factor, precipitation_mm, snow_fraction);
 }
@@ -257,14 +288,13 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_STORES: bool>(
     state: &mut State,
     lanes: &Lanes,
     from: usize,
-    at: &Calendar,
-    fallen: &Fallen<'_>,
+    today: &Today<'_>,
     out: Out<'_>,
 ) {
     let Out { swe, net_melt, outflow, bare_ground_rain, sublimation } = out;
     let stores = match (&lanes.stores, WITH_STORES) {
         (Some(stores), true) => StoreRows {
-            loss_mm: &stores.loss_mm[at.month.clone()][from..],
+            loss_mm: &stores.loss_mm[today.month.clone()][from..],
             loss_of_snow: &stores.loss_of_snow[from..],
             cold_per_mm_c: &stores.cold_per_mm_c[from..],
             cold_share: &stores.cold_share[from..],
@@ -286,13 +316,13 @@ fn store<const IS_WET: bool, const WITH_DETAIL: bool, const WITH_STORES: bool>(
         &mut state.cold[of_stores..],
         &mut state.sublimation[of_stores..],
         &mut sublimation[of_stores..],
-        &fallen.snow[from..],
-        &fallen.rain[from..],
+        &today.fallen.snow[from..],
+        &today.fallen.rain[from..],
         &state.mean[from..],
         &state.melt_degrees[from..],
         &state.freeze_degrees[from..],
-        &lanes.melt_factor[at.day.clone()][from..],
-        &lanes.degree_day_factor.as_ref().unwrap_or(&lanes.melt_factor)[at.day.clone()][from..],
+        &today.melt_factor[from..],
+        &today.degree_day_factor[from..],
         &lanes.holding_fraction[from..],
         &lanes.refreeze_fraction[from..],
         stores,

@@ -84,6 +84,10 @@ pub(super) struct Stores {
     pub cold_per_mm_c: Vec<f64>,
     /// Share of the difference to the air that a day closes.
     pub cold_share: Vec<f64>,
+    /// Whether there is a cold store.
+    has_cold_content: bool,
+    /// Whether the air takes snow.
+    has_sublimation: bool,
 }
 
 impl Lanes {
@@ -121,6 +125,8 @@ impl Lanes {
                 loss_of_snow: row(),
                 cold_per_mm_c: row(),
                 cold_share: row(),
+                has_cold_content: options.cold_content.is_some(),
+                has_sublimation: options.sublimation.is_some(),
             }),
             starts_bare: options.start_bare_each_year,
             has_ground: options.radiation.is_some() || specs().any(|spec| spec.ground.canopy_fraction > 0.0),
@@ -195,8 +201,24 @@ impl Lanes {
     }
 
     /// Whether there is a cold store or a loss to the air.
-    pub fn has_stores(&self) -> bool {
+    pub(super) fn has_stores(&self) -> bool {
         self.stores.is_some()
+    }
+
+    /// Whether there is a cold store.
+    pub fn has_cold_content(&self) -> bool {
+        self.stores.as_ref().is_some_and(|stores| stores.has_cold_content)
+    }
+
+    /// Whether the air takes snow.
+    pub fn has_sublimation(&self) -> bool {
+        self.stores.as_ref().is_some_and(|stores| stores.has_sublimation)
+    }
+
+    /// Whether any option asks for more than the plain model's row passes.
+    pub(super) fn has_options(&self) -> bool {
+        let has_radiation = self.degree_day_factor.is_some();
+        has_radiation || self.has_patches() || self.has_wet_bulb() || self.has_stores()
     }
 
     /// Whether radiation or trees make the melt factor differ from the degree-day factor.

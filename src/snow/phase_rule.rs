@@ -111,7 +111,8 @@ impl PhaseRule {
     }
 
     pub(super) fn unlikely(self) -> Option<Unlikely> {
-        let half_snow_c = self.half_snow_c();
+        // The middle of 0.4 and 4.4 is a bit above 2.4 in binary; nobody typed that bit.
+        let half_snow_c = (self.half_snow_c() * 1e9).round() / 1e9;
         (!(-0.4..=2.4).contains(&half_snow_c)).then(|| {
             Unlikely::new(
                 "snow.rain_snow",

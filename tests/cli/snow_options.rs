@@ -71,7 +71,7 @@ fn a_band_states_a_variation_of_its_own() {
 #[test]
 fn sublimation_is_told() {
     let basin = with("[snow.sublimation]\nmm_per_day = 0.5\nsnowfall_fraction = 0.1");
-    assert_eq!(header(&basin), format!("{PLAIN},cold_content_mm,sublimation_mm"));
+    assert_eq!(header(&basin), format!("{PLAIN},sublimation_mm"));
     let lost = column(&basin, "basin", "sublimation_mm");
     let [rain, snow, outflow, bare, swe] =
         ["rain_mm", "snow_mm", "outflow_mm", "bare_ground_rain_mm", "swe_mm"]

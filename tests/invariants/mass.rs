@@ -23,7 +23,7 @@ proptest! {
                 let outflow_mm = column_sum(&block, &block.outflow_mm, lane);
                 let bare_mm = column_sum(&block, &block.bare_ground_rain_mm, lane);
                 let sublimation_mm =
-                    if lanes.has_stores() { column_sum(&block, &block.sublimation_mm, lane) } else { 0.0 };
+                    if lanes.has_sublimation() { column_sum(&block, &block.sublimation_mm, lane) } else { 0.0 };
                 let accounted_mm = outflow_mm + bare_mm + sublimation_mm + change_mm;
                 let larger_mm = input_mm.abs().max(accounted_mm.abs()).max(1.0);
                 prop_assert!((input_mm - accounted_mm).abs() <= 1e-9 * larger_mm, "{input_mm} in, {accounted_mm} out");

@@ -97,6 +97,37 @@ proptest! {
         }
     }
 
+    /// A narrow block holds the basin means of the year that was copied into it, to the bit: every table of every day, SWE as the
+    /// year ends, and the cover.
+    #[test]
+    fn copied_means_are_the_means(scenario in prop_oneof![scenarios(), scenarios_with_options()]) {
+        let lanes = scenario.lanes(&scenario.changes());
+        let mut narrow = YearBlock::of_means(&lanes);
+        for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
+            block.copy_means(&mut narrow);
+            prop_assert_eq!((narrow.first, narrow.days, narrow.mixes_at), (block.first, block.days, 0));
+            let lost_days = if block.sublimation_mm.is_empty() { 0 } else { block.days };
+            for (of, copied, days) in [
+                (&block.swe_mm, &narrow.swe_mm, block.days + 1),
+                (&block.net_melt_mm, &narrow.net_melt_mm, block.days),
+                (&block.outflow_mm, &narrow.outflow_mm, block.days),
+                (&block.bare_ground_rain_mm, &narrow.bare_ground_rain_mm, block.days),
+                (&block.rain_mm, &narrow.rain_mm, block.days),
+                (&block.snow_mm, &narrow.snow_mm, block.days),
+                (&block.sublimation_mm, &narrow.sublimation_mm, lost_days),
+            ] {
+                for (day, mix) in (0..days).flat_map(|day| (0..lanes.mixes()).map(move |mix| (day, mix))) {
+                    let wide = block.row(of, day)[block.mixes_at + mix];
+                    prop_assert_eq!(wide.to_bits(), narrow.row(copied, day)[mix].to_bits());
+                }
+            }
+            for (day, mix) in (0..block.days).flat_map(|day| (0..lanes.mixes()).map(move |mix| (day, mix))) {
+                let wide = block.covered_share(day, block.mixes_at + mix);
+                prop_assert_eq!(wide, narrow.covered_share(day, mix));
+            }
+        }
+    }
+
     /// A lane's neighbours and its place in the row do not matter: each level run alone gives the same bits.
     #[test]
     fn neighbours_do_not_show(scenario in scenarios()) {
