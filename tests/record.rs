@@ -148,6 +148,11 @@ fn gauge_catch() {
     for (found, expected) in record.series.precipitation_mm.iter().zip([11.0, 12.0, 10.0]) {
         assert!((found - expected).abs() < 1e-12, "{found} for {expected}");
     }
+    // By hand, from 11, 12 and 10 mm: 11*(0.5*1.2 + 0.5*1.1), 12*1.2 and 10*1.1.
+    correct_catch(&mut record.series, GaugeMultiplier { rain: 1.1, snow: 1.2 }, phase);
+    for (found, expected) in record.series.precipitation_mm.iter().zip([12.65, 14.4, 11.0]) {
+        assert!((found - expected).abs() < 1e-12, "{found} for {expected}");
+    }
 }
 
 /// An accumulating gauge whose readings hold a mark that nobody declared, one absurd reading, and a month in which it was

@@ -75,7 +75,8 @@ pub const COLD_PER_MM_C: f64 = 2.097 / 333.43;
 /// `WITH_STORES` adds two lines after the snowfall, which the plain model leaves out: the air takes snow, and the cold store
 /// follows the weather. Snow brings the cold of the air it fell through, and the pack's mean temperature closes a share of
 /// its difference to the air, or to 0 degC where the air is warmer (an antecedent-temperature index; the store is linear in
-/// mass and temperature, Jennings, Kittel & Molotch 2018). Water that freezes takes the store first.
+/// mass and temperature, Jennings, Kittel & Molotch 2018). Snow that sublimes takes its own cold along, so that the pack gets no
+/// colder by it. Water that freezes takes the store first.
 ///
 /// SWE (`ice + liquid`) never falls below 0, and `snow + rain = outflow + bare-ground rain + sublimation + change of SWE`
 /// to the last bits of the arithmetic.
@@ -85,10 +86,10 @@ pub fn step<const WITH_STORES: bool>(pack: Pack, day: LaneDay, lane: LaneConst) 
     let bare_ground_rain_mm = if is_bare { day.rain_mm } else { 0.0 };
     let rain_mm = if is_bare { 0.0 } else { day.rain_mm };
 
-    let ice_mm = pack.ice_mm + day.snow_mm;
-    let sublimation_mm = if WITH_STORES { smaller(day.sublimation_mm, ice_mm) } else { 0.0 };
-    let ice_mm = if WITH_STORES { ice_mm - sublimation_mm } else { ice_mm };
-    let cold_mm = if WITH_STORES { cold_content(pack.cold_mm, ice_mm, day, lane) } else { 0.0 };
+    let lying_mm = pack.ice_mm + day.snow_mm;
+    let sublimation_mm = if WITH_STORES { smaller(day.sublimation_mm, lying_mm) } else { 0.0 };
+    let ice_mm = if WITH_STORES { lying_mm - sublimation_mm } else { lying_mm };
+    let cold_mm = if WITH_STORES { cold_content(pack.cold_mm, lying_mm, ice_mm, day, lane) } else { 0.0 };
 
     let potential_mm = potential_melt(day.melt_factor, day.melt_degrees_c, rain_mm, day.mean_c);
     let melt_mm = smaller(potential_mm, ice_mm);
@@ -110,11 +111,13 @@ pub fn step<const WITH_STORES: bool>(pack: Pack, day: LaneDay, lane: LaneConst) 
     )
 }
 
-/// The cold store after the day's snowfall, with the air's share, mm; `ice_mm` is what lies.
+/// The cold store after the day's snowfall, with the air's share, mm: of `lying_mm` of ice `ice_mm` stay, and what sublimes
+/// takes its own cold along.
 #[inline(always)]
-fn cold_content(cold_mm: f64, ice_mm: f64, day: LaneDay, lane: LaneConst) -> f64 {
+fn cold_content(cold_mm: f64, lying_mm: f64, ice_mm: f64, day: LaneDay, lane: LaneConst) -> f64 {
     let frost_c = larger(-day.mean_c, 0.0);
     let with_snowfall_mm = cold_mm + lane.cold_per_mm_c * day.snow_mm * frost_c;
+    let that_stays_mm = if lying_mm > 0.0 { with_snowfall_mm * (ice_mm / lying_mm) } else { 0.0 };
     let of_the_air_mm = lane.cold_per_mm_c * ice_mm * frost_c;
-    with_snowfall_mm + lane.cold_share * (of_the_air_mm - with_snowfall_mm)
+    that_stays_mm + lane.cold_share * (of_the_air_mm - that_stays_mm)
 }

@@ -5,7 +5,7 @@ use super::scenario::{Scenario, scenarios};
 use super::with_options::scenarios_with_options;
 use proptest::prelude::*;
 use thawline::perturb::PrecipitationChange;
-use thawline::snow::{Path, YearBlock};
+use thawline::snow::{COLD_PER_MM_C, ColdContent, Path, YearBlock};
 
 proptest! {
     #![proptest_config(cases(64))]
@@ -54,6 +54,33 @@ proptest! {
             for (what, values) in columns {
                 for value in values {
                     prop_assert!(*value >= 0.0, "{what} {value}");
+                }
+            }
+        }
+    }
+
+    /// A pack is never colder than the coldest day since it began to lie: neither snowfall, nor the air, nor what sublimes or
+    /// melts cools it further. 1e-9 mm, as for every state.
+    #[test]
+    fn no_pack_is_colder_than_its_air(scenario in scenarios_with_options(), daily_share in 0.0..1.0) {
+        let mut scenario = scenario;
+        scenario.snow.options.cold_content = Some(ColdContent { daily_share });
+        let lanes = scenario.lanes(&scenario.changes());
+        let mut coldest_c = vec![0.0_f64; lanes.count()];
+        for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
+            let detail = block.detail.as_ref().expect("detail was asked for");
+            for day in 0..block.days {
+                for (lane, coldest_c) in coldest_c.iter_mut().enumerate() {
+                    let at = day * detail.width + lane;
+                    *coldest_c = coldest_c.min(detail.mean_c[at]);
+                    let (ice_mm, cold_mm) = (detail.ice_mm[at], detail.cold_mm[at]);
+                    prop_assert!(
+                        cold_mm <= COLD_PER_MM_C * ice_mm * -*coldest_c + 1e-9,
+                        "{cold_mm} mm of cold in {ice_mm} mm of ice, the air never below {coldest_c} degC"
+                    );
+                    if ice_mm == 0.0 {
+                        *coldest_c = 0.0;
+                    }
                 }
             }
         }

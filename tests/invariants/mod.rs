@@ -1,5 +1,6 @@
 //! Properties that hold for every basin, record, warming and parameter set, tried on random ones.
 
+mod columns;
 mod degrees;
 mod engine;
 mod ensemble;

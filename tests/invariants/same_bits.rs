@@ -82,7 +82,7 @@ proptest! {
 
     /// Asking for detail changes nothing of what is there without it.
     #[test]
-    fn detail_does_not_show(scenario in scenarios()) {
+    fn detail_does_not_show(scenario in prop_oneof![scenarios(), scenarios_with_options()]) {
         let series = scenario.climate.series();
         let lanes = scenario.lanes(&scenario.changes());
         let with = Scenario::run(&lanes, &series, Path::Widest);

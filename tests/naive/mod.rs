@@ -174,6 +174,11 @@ pub fn day(band: &Band, terms: Terms, before: Pack, day: Day) -> DayResult {
 
     if let Some(share) = band.options.cold_content_daily_share {
         cold_mm += warming_share * snow_mm * frost_c;
+        if ice_mm > 0.0 {
+            // The pack's temperature stays as it was while ice sublimes.
+            let temperature_c = -cold_mm / (warming_share * ice_mm);
+            cold_mm = -temperature_c * warming_share * ice_of_night_mm;
+        }
         cold_mm += share * (warming_share * ice_of_night_mm * frost_c - cold_mm);
     }
     ice_mm = ice_of_night_mm;
