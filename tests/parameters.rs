@@ -113,9 +113,23 @@ fn numbers_outside_published_ranges_are_unlikely() {
         raw.refreeze_fraction = Some(share);
         radiation(raw, Radiation::FACTOR_MM_PER_C_DAY);
     };
-    let all: [(Ranged, &str); 13] = [
+    let refreezing_beside_a_cold_store: fn(&mut RawSnow, f64) = |raw, share| {
+        raw.refreeze_fraction = Some(share);
+        cold_content(raw, ColdContent::DAILY_SHARE);
+    };
+    let of_the_wet_bulb: fn(&mut RawSnow, f64) = |raw, half_snow_at_c| {
+        step(raw, half_snow_at_c);
+        raw.options.wet_bulb = true;
+    };
+    let all: [(Ranged, &str); 16] = [
         ((HIGHEST, highest, [1.6, 6.0]), "National Engineering Handbook 630"),
-        ((HIGHEST, beside_radiation, [0.6 + BEYOND / 2.0, 5.0]), "National Engineering Handbook 630"),
+        (
+            ("snow.radiation.factor_mm_per_c_day", beside_radiation, [0.6 + BEYOND / 2.0, 5.0]),
+            "National Engineering Handbook 630",
+        ),
+        (("snow.rain_snow", |raw, c| s_curve(raw, 1.0, c), [4.0, 20.0]), "8 to 16 is usual"),
+        (("snow.rain_snow", of_the_wet_bulb, [0.0, 1.6 - BEYOND / 2.0]), "0 to 1.6 degC is usual"),
+        (("snow.refreeze_fraction", refreezing_beside_a_cold_store, [0.0, 0.15]), "beside the cold store"),
         (("snow.rain_snow", |raw, c| linear(raw, c - 1.5, c + 1.5), [-0.4, 2.4]), "Jennings et al. 2018"),
         (("snow.rain_snow", step, [-0.4, 2.4]), "Jennings et al. 2018"),
         (("snow.rain_snow", |raw, c| s_curve(raw, c, 10.0), [-0.4, 2.4]), "Jennings et al. 2018"),
@@ -132,7 +146,7 @@ fn numbers_outside_published_ranges_are_unlikely() {
             ("snow.refreeze_fraction", |raw, share| raw.refreeze_fraction = Some(share), [0.0, 0.30]),
             "0.05 is common practice",
         ),
-        (("snow.refreeze_fraction", refreezing_beside_radiation, [0.0, 0.60]), "0.05 is common practice"),
+        (("snow.refreeze_fraction", refreezing_beside_radiation, [0.0, 0.60]), "beside radiation"),
         (("snow.patchiness.coefficient_of_variation", patchiness, [0.0, 0.9]), "Liston 2004, from memory"),
         (("snow.cold_content.daily_share", cold_content, [0.05, 0.5]), "as cold as the air of each day"),
         (("snow.sublimation.mm_per_day", |raw, mm| sublimation(raw, mm, 0.0), [0.0, 1.5]), "1.5 mm a day"),
@@ -243,6 +257,17 @@ fn numbers_that_do_not_go_together() {
     assert!(faults[0].mend.contains("count twice"), "{faults:?}");
     raw.factor_lowest = Some(1.5);
     assert!(SnowParams::check(&raw, true, false).is_ok());
+    // Without a season one number is both; that the lowest must not be the higher is no second fault.
+    for (lowest, highest) in [(Some(3.0), None), (None, Some(3.0))] {
+        (raw.factor_lowest, raw.factor_highest) = (lowest, highest);
+        let (snow, _) = SnowParams::check(&raw, true, false).expect("one number");
+        assert_eq!((snow.degree_day_factor_lowest, snow.degree_day_factor_highest), (3.0, 3.0));
+    }
+    (raw.factor_lowest, raw.factor_highest) = (Some(3.0), Some(1.0));
+    assert_eq!(SnowParams::check(&raw, true, false).expect_err("two numbers").len(), 1);
+    let mut loss = RawSnow::default();
+    loss.options.sublimation = Some(Sublimation { mm_per_day: [-0.1; 12], snowfall_fraction: 0.0 });
+    assert_eq!(SnowParams::check(&loss, true, false).expect_err("one number, typed once").len(), 1);
     let diurnal = RawSnow { degree_rule: Some(DegreeRule::Diurnal), ..RawSnow::default() };
     assert!(SnowParams::check(&diurnal, true, false).is_ok());
     let faults = SnowParams::check(&diurnal, false, false).expect_err("no range");

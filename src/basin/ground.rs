@@ -55,6 +55,27 @@ impl Basin {
         self.bands.chunk_by(Band::has_edges_of).count()
     }
 
+    /// Ground that can be, and hardly is.
+    pub(super) fn odd_ground(&self) -> Vec<Unlikely> {
+        const MOST_VARIATION: f64 = 0.9;
+        const LEAST_CANOPY: f64 = 0.01;
+        let mut found = Vec::new();
+        let variations = self.bands.iter().filter_map(|band| band.ground.accumulation_variation);
+        let most = variations.fold(0.0, f64::max);
+        if most > MOST_VARIATION {
+            let why = format!(
+                "accumulation_cv is {most} in one of the bands; usual is 0.1 to 0.9 (Liston 2004, from memory)"
+            );
+            found.push(Unlikely::new("basin.bands", why));
+        }
+        let most = self.bands.iter().map(|band| band.ground.canopy_fraction).fold(0.0, f64::max);
+        if most > 0.0 && most <= LEAST_CANOPY {
+            let why = "trees cover at most 1 % of any band: are they fractions in a column of percent?";
+            found.push(Unlikely::new("basin.bands", why));
+        }
+        found
+    }
+
     /// Says so where bands are steeper than snow lies.
     pub(super) fn too_steep(&self) -> Option<Unlikely> {
         let steep = self.bands.iter().filter(|band| band.ground.slope_deg > STEEP_DEG).count();

@@ -109,6 +109,7 @@ impl Basin {
             ));
         }
         found.extend(self.too_steep());
+        found.extend(self.odd_ground());
         let ratio = self.precipitation_ratio(station_elevation_m);
         if !USUAL_PRECIPITATION_RATIO.contains(&ratio) {
             found.push(Unlikely::new(

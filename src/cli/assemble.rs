@@ -78,7 +78,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 precipitation: scenario.basin.precipitation,
             };
             let mut weather = record.series.clone();
-            let clashes = clashes(&scenario, &weather);
+            let clashes = clashes(&scenario, basin.bands.len(), &weather);
             if !clashes.is_empty() {
                 return Err(Failure::input(&clashes, &file.name, &file.text, shared.is_coloured()));
             }

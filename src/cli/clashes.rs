@@ -5,9 +5,25 @@ use crate::perturb::GeneratorChoice;
 use crate::scenario::Scenario;
 use crate::weather::Series;
 
-/// Faults between the snow model, the record and the generator.
-pub(super) fn clashes(scenario: &Scenario, weather: &Series) -> Vec<Fault> {
+/// Lanes take some 25 kB each on every thread: these, half a gigabyte.
+const MOST_LANES: usize = 20_000;
+
+/// Faults between the snow model, the bands, the record and the generator.
+pub(super) fn clashes(scenario: &Scenario, bands: usize, weather: &Series) -> Vec<Fault> {
     let mut faults = Vec::new();
+    let classes = scenario.snow.options.patchiness.map_or(1, |patchiness| patchiness.classes);
+    let levels = scenario.warming.levels_c.len();
+    if classes > 1 && bands * classes * levels > MOST_LANES {
+        faults.push(Fault::key(
+            "snow.patchiness.classes",
+            format!(
+                "{classes} classes of {bands} bands at {levels} levels: {} lanes",
+                bands * classes * levels
+            ),
+            format!("at most {MOST_LANES} lanes"),
+            "take fewer classes: 10 are off by a few percent of a snowfall while it melts",
+        ));
+    }
     if !scenario.snow.options.wet_bulb {
         return faults;
     }

@@ -98,12 +98,16 @@ impl Reader {
         fixed(self.units.area().of(area_km2), 1)
     }
 
-    /// `0.5 to 3.5 mm per °C and day`: two degree-day factors.
+    /// `0.5 to 3.5 mm per °C and day`: two degree-day factors, or one where they are the same.
     pub fn degree_day_factors(self, lowest: f64, highest: f64) -> String {
         let unit = self.units.degree_day_factor();
         let [lowest, highest] =
             [lowest, highest].map(|factor| trimmed(&fixed(unit.of(factor), 3)).to_owned());
-        format!("{lowest} to {highest} {}", unit.word)
+        if lowest == highest {
+            format!("{highest} {}", unit.word)
+        } else {
+            format!("{lowest} to {highest} {}", unit.word)
+        }
     }
 
     /// `+3.0 % per °C`: what precipitation does with warming.

@@ -13,10 +13,10 @@ enum PhaseWord {
 }
 
 pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern: bool) -> Option<SnowParams> {
-    let rain_snow = read_phase(section.section("rain_snow"));
     let degree_rule =
         section.choice("degree_rule", &[("diurnal", DegreeRule::Diurnal), ("mean", DegreeRule::Mean)]);
     let options = snow_options::read(&mut section, is_southern);
+    let rain_snow = read_phase(section.section("rain_snow"), options.wet_bulb);
     let mut factor = section.section("degree_day_factor_mm_per_c_day");
     let raw = RawSnow {
         rain_snow,
@@ -46,7 +46,8 @@ pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern:
     snow
 }
 
-fn read_phase(mut section: Section<'_>) -> Option<PhaseRule> {
+/// The rule as it was typed; what it leaves out is the default of its kind, of the wet bulb where that tells rain from snow.
+fn read_phase(mut section: Section<'_>, is_wet_bulb: bool) -> Option<PhaseRule> {
     let words = [
         ("linear", PhaseWord::Linear),
         ("step", PhaseWord::Step),
@@ -64,6 +65,7 @@ fn read_phase(mut section: Section<'_>) -> Option<PhaseRule> {
         return None;
     };
     let default = match word {
+        PhaseWord::Linear if is_wet_bulb => PhaseRule::LINEAR_WET_BULB,
         PhaseWord::Linear => PhaseRule::LINEAR,
         PhaseWord::Step => PhaseRule::STEP,
         PhaseWord::Tanh => PhaseRule::Tanh,

@@ -98,7 +98,13 @@ impl SnowOptions {
             within(faults, "snow.cold_content.daily_share", daily_share, 0.0..=1.0, "", mend);
         }
         if let Some(Sublimation { mm_per_day, snowfall_fraction }) = self.sublimation {
+            // One number that is typed stands in several months: it is one fault.
+            let mut told: Vec<u64> = Vec::new();
             for mm in mm_per_day {
+                if told.contains(&mm.to_bits()) {
+                    continue;
+                }
+                told.push(mm.to_bits());
                 let mend = "winter losses of 0.2 to 1 mm a day are usual";
                 within(faults, "snow.sublimation.mm_per_day", mm, 0.0..=10.0, "mm a day", mend);
             }

@@ -145,11 +145,17 @@ impl SnowParams {
             ));
         }
         let default = Self::defaults_with(rule, is_southern, raw.options);
+        // With radiation the factor has no season: one number that is stated is both.
+        let is_even = raw.options.radiation.is_some();
+        let [lowest, highest] = match (raw.factor_lowest, raw.factor_highest) {
+            (Some(only), None) | (None, Some(only)) if is_even => [Some(only); 2],
+            stated => stated.into(),
+        };
         let snow = Self {
             rain_snow: raw.rain_snow.unwrap_or(default.rain_snow),
             degree_rule: rule,
-            degree_day_factor_lowest: raw.factor_lowest.unwrap_or(default.degree_day_factor_lowest),
-            degree_day_factor_highest: raw.factor_highest.unwrap_or(default.degree_day_factor_highest),
+            degree_day_factor_lowest: lowest.unwrap_or(default.degree_day_factor_lowest),
+            degree_day_factor_highest: highest.unwrap_or(default.degree_day_factor_highest),
             highest_on: raw.highest_on.unwrap_or(default.highest_on),
             melt_base_c: raw.melt_base_c.unwrap_or(default.melt_base_c),
             liquid_holding_fraction: raw.liquid_holding_fraction.unwrap_or(default.liquid_holding_fraction),
@@ -166,7 +172,8 @@ impl SnowParams {
         let (lowest, highest) = (self.degree_day_factor_lowest, self.degree_day_factor_highest);
         within(faults, &key("lowest"), lowest, 0.0..=50.0, FACTOR, "snow melts 1 to 8 mm per degC and day");
         within(faults, &key("highest"), highest, 0.0..=50.0, FACTOR, "snow melts 1 to 8 mm per degC and day");
-        if lowest > highest {
+        let is_even = self.options.radiation.is_some();
+        if lowest > highest && !is_even {
             faults.push(Fault::key(
                 key("lowest"),
                 lowest,
@@ -174,7 +181,7 @@ impl SnowParams {
                 "exchange the two",
             ));
         }
-        if self.options.radiation.is_some() && lowest != highest {
+        if is_even && lowest != highest {
             faults.push(Fault::key(
                 key("lowest"),
                 lowest,
@@ -192,19 +199,35 @@ impl SnowParams {
 
     fn unlikely(&self) -> Vec<Unlikely> {
         let mut found = Vec::new();
-        let of_radiation = self.options.radiation.map_or(0.0, |radiation| radiation.factor_mm_per_c_day);
-        let highest = self.degree_day_factor_highest + of_radiation;
+        let factor = self.degree_day_factor_highest;
+        let (key, highest, together) = match self.options.radiation {
+            None => ("snow.degree_day_factor_mm_per_c_day.highest", factor, ""),
+            Some(radiation) => (
+                "snow.radiation.factor_mm_per_c_day",
+                factor + radiation.factor_mm_per_c_day,
+                ", the degree-day factor included,",
+            ),
+        };
         if !(1.6..=6.0).contains(&highest) {
             found.push(Unlikely::new(
-                "snow.degree_day_factor_mm_per_c_day.highest",
+                key,
                 format!(
-                    "{highest} mm per degC and day; the usual range is 1.6 to 6.0 (National Engineering Handbook 630, \
-                     chapter 11)"
+                    "{highest} mm per degC and day{together} at the highest; the usual range is 1.6 to 6.0 (National \
+                     Engineering Handbook 630, chapter 11)"
                 ),
             ));
         }
-        found.extend(self.rain_snow.unlikely());
-        let most_refreezing = if self.options.radiation.is_some() { 0.60 } else { 0.30 };
+        found.extend(self.rain_snow.unlikely(self.options.wet_bulb));
+        let (most_refreezing, why_refreezing) = if self.options.radiation.is_some() {
+            (0.60, "up to 0.60 of the small factor beside radiation: the default is 0.50")
+        } else if self.options.cold_content.is_some() {
+            (
+                0.15,
+                "up to 0.15 beside the cold store, which freezes what it must: the default is 0.05, common practice",
+            )
+        } else {
+            (0.30, "up to 0.30: 0.05 is common practice, the defaults reach 0.20 in place of cold content")
+        };
         let usual = [
             ("snow.melt_base_c", self.melt_base_c, -1.0..=2.0, "-1 to 2 degC (common practice)"),
             (
@@ -213,13 +236,7 @@ impl SnowParams {
                 0.0..=0.10,
                 "up to 0.10: ripe snow holds 0.02 to 0.05 (Singh & Singh 2001, from memory), the defaults 0.10",
             ),
-            (
-                "snow.refreeze_fraction",
-                self.refreeze_fraction,
-                0.0..=most_refreezing,
-                "up to 0.30: 0.05 is common practice, the defaults reach 0.20 in place of cold content, and 0.50 of the \
-                 small factor beside radiation",
-            ),
+            ("snow.refreeze_fraction", self.refreeze_fraction, 0.0..=most_refreezing, why_refreezing),
         ];
         for (key, value, range, why) in usual {
             if !range.contains(&value) {

@@ -110,17 +110,25 @@ impl PhaseRule {
         }
     }
 
-    pub(super) fn unlikely(self) -> Option<Unlikely> {
+    /// What of the rule is unlikely, of temperatures of the air or of the wet bulb.
+    pub(super) fn unlikely(self, is_wet_bulb: bool) -> Option<Unlikely> {
+        const KEY: &str = "snow.rain_snow";
+        if let Self::SCurve { mixed_range_c, .. } = self
+            && !(4.0..=20.0).contains(&mixed_range_c)
+        {
+            let why = format!("a mixed range of {mixed_range_c} degC; 8 to 16 is usual (common practice)");
+            return Some(Unlikely::new(KEY, why));
+        }
         // The middle of 0.4 and 4.4 is a bit above 2.4 in binary; nobody typed that bit.
         let half_snow_c = (self.half_snow_c() * 1e9).round() / 1e9;
-        (!(-0.4..=2.4).contains(&half_snow_c)).then(|| {
-            Unlikely::new(
-                "snow.rain_snow",
-                format!(
-                    "half of the precipitation is snow at {half_snow_c} degC; 95 % of stations lie between -0.4 and \
-                     2.4 degC (Jennings et al. 2018)"
-                ),
-            )
+        let (usual, why) = if is_wet_bulb {
+            (0.0..=1.6, "of the wet bulb; 0 to 1.6 degC is usual there (common practice)")
+        } else {
+            (-0.4..=2.4, "; 95 % of stations lie between -0.4 and 2.4 degC (Jennings et al. 2018)")
+        };
+        let space = if is_wet_bulb { " " } else { "" };
+        (!usual.contains(&half_snow_c)).then(|| {
+            Unlikely::new(KEY, format!("half of the precipitation is snow at {half_snow_c} degC{space}{why}"))
         })
     }
 }

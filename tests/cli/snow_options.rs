@@ -1,6 +1,7 @@
 //! The options of the snow, as a user turns them on: what the daily table shows of each, and what cannot be.
 
 use super::basin::{Basin, weather};
+use serde_json::Value;
 
 fn with(snow: &str) -> Basin {
     let basin = Basin::new();
@@ -84,7 +85,16 @@ fn sublimation_is_told() {
     assert!(basin.read("out/tables/basin-amounts.csv").contains("\nsublimation_mm,"));
     assert!(basin.read("out/briefing.html").contains("<dt>Sublimation</dt>"));
     assert!(!basin.read("out/briefing.html").contains("forest interception, sublimation,"));
-    // One number holds in the five months of winter alone, and twelve where they say.
+    // One number holds in the five months of winter alone, here and in the south, and twelve where they say.
+    let months = |text: &str| -> Vec<usize> {
+        let document: Value = serde_json::from_str(text).unwrap();
+        let monthly = document["snow"]["sublimation"]["mm_per_day"].as_array().unwrap().clone();
+        let is_lossy = |month: &Value| month.as_f64().unwrap() > 0.0;
+        monthly.iter().enumerate().filter(|(_, month)| is_lossy(month)).map(|(month, _)| month + 1).collect()
+    };
+    assert_eq!(months(&basin.run("check scenario.toml --json").stdout), [1, 2, 3, 11, 12]);
+    basin.exchange("latitude_deg = 40", "latitude_deg = -40");
+    assert_eq!(months(&basin.run("check scenario.toml --json").stdout), [5, 6, 7, 8, 9]);
     let summer = with("[snow.sublimation]\nmm_per_day = [0,0,0,0,0,0,0,0,0,0,0,9]");
     let daily = summer.run("daily scenario.toml --quiet").stdout;
     let in_december = |line: &str| line.split('-').nth(1) == Some("12");
@@ -215,4 +225,69 @@ fn faults_of_options() {
     ] {
         assert!(said.contains(part), "'{part}' is not in: {}", ended.stderr);
     }
+}
+
+/// A rule that is only named takes the numbers of the temperature that tells rain from snow, and so changes nothing.
+#[test]
+fn a_named_rule_has_the_default_of_the_wet_bulb() {
+    let humid = |rule: &str| {
+        let basin = with(&format!("[snow]\n{rule}\n[snow.wet_bulb]"));
+        let lines: Vec<String> = weather(3).lines().map(|line| format!("{line},70")).collect();
+        basin.write("weather.csv", &lines.join("\n").replacen("precip_mm,70", "precip_mm,rh_pct", 1));
+        basin.exchange(
+            "[warming]",
+            "relative_humidity = { column = \"rh_pct\", unit = \"pct\" }\n\n[warming]",
+        );
+        let ended = basin.run("check scenario.toml");
+        assert_eq!(ended.status, 0, "{}", ended.stderr);
+        (ended.stdout, basin.run("daily scenario.toml --quiet").stdout)
+    };
+    let (_, unstated) = humid("");
+    let (said, named) = humid("rain_snow = { rule = \"linear\" }");
+    assert!(unstated == named, "the same to the byte");
+    assert!(said.contains("snow.rain_snow.rain_only_above_c = 1.8"), "{said}");
+    let (said, _) = humid("rain_snow = { rule = \"step\", half_snow_at_c = 2.0 }");
+    assert!(said.contains("of the wet bulb; 0 to 1.6 degC is usual there"), "{said}");
+}
+
+/// What the page says of melt, refreezing and the gauge holds with the sun and the wet bulb on.
+#[test]
+fn the_page_says_what_the_options_make_of_the_rest() {
+    let basin = with("[snow.radiation]");
+    let ended = basin.run("study scenario.toml --into out --quiet");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    let page = basin.read("out/briefing.html");
+    assert!(page.contains("<dd>0.25 mm per °C and day through the year, for degrees above"), "one factor");
+    assert!(page.contains("refreezes at 50 % of the melt rate without the sun"));
+    assert!(page.contains("once, at the observed temperature"));
+}
+
+/// Patch classes are lanes: so many that they would not fit are refused before they are made.
+#[test]
+fn too_many_classes_are_refused() {
+    let basin = with("[snow.patchiness]\ncoefficient_of_variation = 0.5\nclasses = 100");
+    let bands: String = (0..200).map(|band| format!("{},{},1\n", 1900 + 5 * band, 1905 + 5 * band)).collect();
+    basin.write("bands.csv", &format!("lower_m,upper_m,area_km2\n{bands}"));
+    let ended = basin.run("check scenario.toml");
+    assert_eq!(ended.status, 3);
+    assert!(ended.stderr.contains("100 classes of 200 bands at 2 levels: 40000 lanes"), "{}", ended.stderr);
+    assert!(ended.stderr.contains("scenario.toml:"), "{}", ended.stderr);
+}
+
+/// Variations and trees that can be, and hardly are.
+#[test]
+fn odd_ground_has_a_second_look() {
+    let second_look = |columns: &str, cells: &str| {
+        let basin = with("[snow.patchiness]\ncoefficient_of_variation = 0.4");
+        let bands =
+            format!("lower_m,upper_m,area_km2,{columns}\n1900,2200,40,{cells}\n2200,2500,25,{cells}\n");
+        basin.write("bands.csv", &bands);
+        basin.run("check scenario.toml").stdout.split_whitespace().collect::<Vec<_>>().join(" ")
+    };
+    let uneven = second_look("accumulation_cv", "1.5");
+    assert!(uneven.contains("accumulation_cv is 1.5 in one of the bands"), "{uneven}");
+    let usual = second_look("accumulation_cv", "0.9");
+    assert!(!usual.contains("in one of the bands"), "{usual}");
+    let trees = second_look("canopy_pct", "0.45");
+    assert!(trees.contains("are they fractions in a column of percent?"), "{trees}");
 }

@@ -24,13 +24,15 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
                 ", for degrees above " (reader.temperature(snow.melt_base_c)) " "
                 @match snow.degree_rule { DegreeRule::Mean => "of the daily mean" , DegreeRule::Diurnal => "of a sine between the day's minimum and maximum" } }
             dt { "Pack" } dd { "holds liquid water up to " (fixed(100.0 * snow.liquid_holding_fraction, 0)) " % of its ice; refreezes at "
-                (fixed(100.0 * snow.refreeze_fraction, 0)) " % of the melt rate" }
+                (fixed(100.0 * snow.refreeze_fraction, 0)) " % of the melt rate"
+                @if snow.options.radiation.is_some() { " without the sun" } }
             @for (name, what) in options(reader, snow) { dt { (name) } dd { (what) } }
             @if study.basin.bands.iter().any(|band| band.ground.canopy_fraction > 0.0) {
                 dt { "Trees" } dd { "slow melt and refreezing by 4.6 % for every tenth of a band that they cover (after Kuusisto 1980)" }
             }
             dt { "Gauge" } dd { "what was caught times " (study.gauge_multiplier.snow) " for snow and " (study.gauge_multiplier.rain)
-                " for rain, once, at the observed temperature" }
+                " for rain, once, at the observed "
+                @if snow.options.wet_bulb { "wet-bulb " } "temperature" }
             dt { "Elevation" } dd { "station at " (reader.elevation(study.station_elevation_m)) "; precipitation changes with elevation by "
                 (reader.precipitation_gradient(&study.basin.precipitation)) "; the basin's mean is "
                 (fixed(study.basin.precipitation_ratio(study.station_elevation_m), 2)) " times the station's, so "

@@ -109,7 +109,7 @@ fn humidity_that_hardly_is() {
         ("beyond what air has", with(PERCENT, "106", "70")),
         ("below nothing", with(PERCENT, "-1", "70")),
         ("a little above saturation", with(PERCENT, "104", "70")),
-        ("fractions as percent", with(PERCENT, "0.9", "0.7")),
+        ("fractions as percent, and a slip", with(PERCENT, "2", "0.7")),
         ("an impossible dew point", with("dew_point = { column = \"rh\", unit = \"degC\" }", "-99", "-30")),
     ]
     .map(|(what, basin)| format!("## {what}\n{}\n", accepted(&basin)));
@@ -125,9 +125,9 @@ second look: weather.relative_humidity: 1 value beyond 0 to 105 percent, which n
 ## a little above saturation
 second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 
-## fractions as percent
+## fractions as percent, and a slip
 second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
-second look: weather.relative_humidity: 1095 values, none of them above 1 percent; the first on 2000-10-01 (line 2): 0.9 percent. Are they fractions? Then state unit = "fraction"
+second look: weather.relative_humidity: 1094 values of at most 1.5 percent, and hardly one above; the first on 2000-10-02 (line 3): 0.7 percent. Are they fractions? Then state unit = "fraction"
 
 ## an impossible dew point
 second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
