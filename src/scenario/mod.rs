@@ -23,6 +23,7 @@ mod season;
 mod section;
 mod snow;
 mod snow_options;
+mod temperature_gradient;
 mod texts;
 mod warming;
 mod weather;

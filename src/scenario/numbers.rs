@@ -148,26 +148,37 @@ impl Section<'_> {
         Some(numbers.into_iter().map(|number| number as i32).collect())
     }
 
-    /// Twelve numbers, January first, or one for all months, if they were typed.
-    pub fn one_or_monthly(&mut self, key: &'static str) -> Option<[f64; 12]> {
-        match self.value(key)? {
-            DeValue::Array(_) => self.monthly(key),
-            _ => self.number(key).map(|number| [number; 12]),
+    /// Twelve numbers, January first, or one for all months, if they were typed; `more` is what else may be meant.
+    pub fn one_or_monthly(&mut self, key: &'static str, more: &str) -> Option<[f64; 12]> {
+        const EXPECTED: &str = "one number, or twelve, January first";
+        let value = self.value(key)?;
+        let more = if more.is_empty() { String::new() } else { format!("; {more}") };
+        if let DeValue::Array(_) = value {
+            return self.twelve(key, EXPECTED, &format!("give one a month, or one alone{more}"));
         }
+        let number = finite(value);
+        if number.is_none() {
+            let text = value.as_str().and_then(|text| text.trim().parse::<f64>().ok());
+            let mend = match text {
+                Some(number) => format!("take the quotes away: {key} = {number}"),
+                None => format!("write {key} = ..., or twelve numbers in [ ]{more}"),
+            };
+            self.fault(Fault::key(self.path_of(key), described(value), EXPECTED, mend));
+        }
+        number.map(|number| [number; 12])
     }
 
     /// Twelve numbers, January first, if they were typed.
     pub fn monthly(&mut self, key: &'static str) -> Option<[f64; 12]> {
+        self.twelve(key, "twelve numbers, January first", "give one a month")
+    }
+
+    fn twelve(&mut self, key: &'static str, expected: &str, mend: &str) -> Option<[f64; 12]> {
         let numbers = self.numbers(key)?;
         let found = numbers.len();
         let twelve = <[f64; 12]>::try_from(numbers).ok();
         if twelve.is_none() {
-            self.fault(Fault::key(
-                self.path_of(key),
-                format!("{found} numbers"),
-                "twelve numbers, January first",
-                "give one a month",
-            ));
+            self.fault(Fault::key(self.path_of(key), format!("{found} numbers"), expected, mend));
         }
         twelve
     }

@@ -42,7 +42,7 @@ fn per_degree(section: &mut Section<'_>) -> Option<PrecipitationChange> {
         section.default(key, "0");
         return Some(PrecipitationChange::PctPerC([0.0; 12]));
     }
-    let pct = section.one_or_monthly(key)?;
+    let pct = section.one_or_monthly(key, "")?;
     if let Some(beyond) = pct.iter().find(|pct| !POSSIBLE_PCT_PER_C.contains(pct)) {
         section.fault(Fault::key(
             section.path_of(key),

@@ -49,7 +49,7 @@ fn table<T>(
 
 /// One number a day holds in the five months of winter, and in no others.
 fn sublimation(table: &mut Section<'_>, is_southern: bool) -> Option<Sublimation> {
-    let typed = table.one_or_monthly("mm_per_day");
+    let typed = table.one_or_monthly("mm_per_day", "");
     let is_monthly = table.is_list("mm_per_day");
     let share = table.number("snowfall_fraction");
     if !table.has("mm_per_day") && !table.has("snowfall_fraction") {

@@ -38,3 +38,89 @@ fn published_gradients_pass_and_others_have_a_second_look() {
         "one month"
     );
 }
+
+const PLAIN: &str = "temperature_gradient_c_per_km = -6.0\n";
+
+/// What `check` refuses with `keys` in place of the basin's temperature gradient.
+fn refused(keys: &str) -> String {
+    let basin = Basin::new();
+    basin.exchange(PLAIN, keys);
+    let ended = basin.run("check scenario.toml");
+    assert_eq!(ended.status, 3, "{}", ended.stdout);
+    ended.stderr.trim_end().trim_end_matches("1 fault; nothing was run").trim_end().to_owned()
+}
+
+/// A gradient of minima alone leaves maxima without one, and the other way round; all three leave the plain one without
+/// effect. `--json` says the same.
+#[test]
+fn minima_and_maxima_have_one_gradient_each() {
+    insta::assert_snapshot!(refused("tmin_temperature_gradient_c_per_km = -5.0\n"), @r#"
+error: basin.tmax_temperature_gradient_c_per_km: no 'tmax_temperature_gradient_c_per_km'
+ --> scenario.toml:4:2
+  |
+4 | [basin]
+  |  ^^^^^ expected a gradient of maxima, too, beside tmin_temperature_gradient_c_per_km
+  |
+  = help: add tmax_temperature_gradient_c_per_km, or temperature_gradient_c_per_km, which holds for those that have none of their own
+"#);
+    insta::assert_snapshot!(refused("tmax_temperature_gradient_c_per_km = -5.0\n"), @r#"
+error: basin.tmin_temperature_gradient_c_per_km: no 'tmin_temperature_gradient_c_per_km'
+ --> scenario.toml:4:2
+  |
+4 | [basin]
+  |  ^^^^^ expected a gradient of minima, too, beside tmax_temperature_gradient_c_per_km
+  |
+  = help: add tmin_temperature_gradient_c_per_km, or temperature_gradient_c_per_km, which holds for those that have none of their own
+"#);
+    insta::assert_snapshot!(refused(""), @r#"
+error: basin.temperature_gradient_c_per_km: no 'temperature_gradient_c_per_km'
+ --> scenario.toml:4:2
+  |
+4 | [basin]
+  |  ^^^^^ expected one number, or twelve
+  |
+  = help: add it: negative, since it is colder higher up; -6 where you know nothing better (the standard atmosphere has -6.5). Twelve numbers give one a month, January first; tmin_temperature_gradient_c_per_km and tmax_temperature_gradient_c_per_km part minima from maxima
+"#);
+    let three = "temperature_gradient_c_per_km = -12\ntmin_temperature_gradient_c_per_km = -5.0\ntmax_temperature_gradient_c_per_km = -6\n";
+    insta::assert_snapshot!(refused(three), @r#"
+error: basin.temperature_gradient_c_per_km: temperature_gradient_c_per_km beside tmin_temperature_gradient_c_per_km and tmax_temperature_gradient_c_per_km
+ --> scenario.toml:7:33
+  |
+7 | temperature_gradient_c_per_km = -12
+  |                                 ^^^ expected one for both, or one for each
+  |
+  = help: take temperature_gradient_c_per_km out: the other two stand for all
+"#);
+    insta::assert_snapshot!(refused("temperature_gradient_c_per_km = { tmin = -5, tmax = -6 }\n"), @r#"
+error: basin.temperature_gradient_c_per_km: a table
+ --> scenario.toml:7:33
+  |
+7 | temperature_gradient_c_per_km = { tmin = -5, tmax = -6 }
+  |                                 ^^^^^^^^^^^^^^^^^^^^^^^^ expected one number, or twelve, January first
+  |
+  = help: write temperature_gradient_c_per_km = ..., or twelve numbers in [ ]; minima and maxima of their own: tmin_temperature_gradient_c_per_km and tmax_temperature_gradient_c_per_km
+"#);
+    let basin = Basin::new();
+    basin.exchange(PLAIN, "tmin_temperature_gradient_c_per_km = -5.0\n");
+    let ended = basin.run("check scenario.toml --json");
+    assert_eq!(ended.status, 3);
+    let said: serde_json::Value = serde_json::from_str(&ended.stdout).unwrap();
+    assert!(ended.stdout.contains("no 'tmax_temperature_gradient_c_per_km'"), "{said}");
+}
+
+/// A gradient of its own for one of them stands beside the plain one, which holds for the other.
+#[test]
+fn the_plain_gradient_holds_for_those_that_have_none_of_their_own() {
+    let swe = |keys: &str| {
+        let basin = Basin::new();
+        basin.exchange(PLAIN, keys);
+        let ended = basin.run("daily scenario.toml");
+        assert_eq!(ended.status, 0, "{}", ended.stderr);
+        ended.stdout
+    };
+    let [tmin, tmax] = ["tmin", "tmax"].map(|of| format!("{of}_temperature_gradient_c_per_km = "));
+    let apart = swe(&format!("{tmin}-4\n{tmax}-7\n"));
+    assert_eq!(swe(&format!("{PLAIN}{tmin}-4\n").replace("-6.0", "-7")), apart);
+    assert_eq!(swe(&format!("{PLAIN}{tmax}-7\n").replace("-6.0", "-4")), apart);
+    assert_ne!(swe(&format!("{tmin}-7\n{tmax}-4\n")), apart);
+}

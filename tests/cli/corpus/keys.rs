@@ -153,15 +153,15 @@ error: basin.temperature_gradient_c_per_km: 2 numbers
  --> scenario.toml:7:33
   |
 7 | temperature_gradient_c_per_km = [-6, -6]
-  |                                 ^^^^^^^^ expected twelve numbers, January first
+  |                                 ^^^^^^^^ expected one number, or twelve, January first
   |
-  = help: give one a month
+  = help: give one a month, or one alone; minima and maxima of their own: tmin_temperature_gradient_c_per_km and tmax_temperature_gradient_c_per_km
 
 error: basin.temperature_gradient_c_per_km: the text "-6"
  --> scenario.toml:7:33
   |
 7 | temperature_gradient_c_per_km = "-6"
-  |                                 ^^^^ expected a number
+  |                                 ^^^^ expected one number, or twelve, January first
   |
   = help: take the quotes away: temperature_gradient_c_per_km = -6
 
