@@ -80,7 +80,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             let mut weather = record.series.clone();
             let clashes = clashes(&scenario, basin.bands.len(), &weather);
             if !clashes.is_empty() {
-                return Err(Failure::input(&clashes, &file.name, &file.text, shared.is_coloured()));
+                return Err(refused(&clashes, &file, shared));
             }
             let phase = StationPhase::of(&scenario.snow, scenario.weather.station_elevation_m);
             correct_catch(&mut weather, scenario.weather.gauge_multiplier, phase);
@@ -98,7 +98,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             let stated = scenario.weather.baseline_years;
             let baseline_years = BaselineYears::of(stated, &weather.years).map_err(|fault| vec![fault]);
             let Some(baseline_years) = take(baseline_years, &mut faults).filter(|_| faults.is_empty()) else {
-                return Err(Failure::input(&faults, &file.name, &file.text, shared.is_coloured()));
+                return Err(refused(&faults, &file, shared));
             };
             let baseline = Baseline::of(&weather, survey);
             let mut files = vec![file.clone(), bands_file, weather_file];
@@ -145,8 +145,17 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             };
             Ok(ready)
         }
-        _ => Err(Failure::input(&faults, &file.name, &file.text, shared.is_coloured())),
+        _ => Err(refused(&faults, &file, shared)),
     }
+}
+
+/// What is said of a scenario that is not taken. One without a single fault is none of the user's: something was not read and
+/// nobody said so.
+fn refused(faults: &[Fault], scenario: &InputFile, shared: &Shared) -> Failure {
+    if faults.is_empty() {
+        return Failure::Ours("part of the scenario was not read, and no fault was found in it".to_owned());
+    }
+    Failure::input(faults, &scenario.name, &scenario.text, shared.is_coloured())
 }
 
 fn read_bands_of(

@@ -10,6 +10,7 @@ mod ground;
 mod humidity;
 mod keys;
 mod mutations;
+mod never_silent;
 mod scenarios;
 mod tables;
 mod units;
