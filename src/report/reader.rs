@@ -1,7 +1,7 @@
 //! Quantities as one reader takes them: in the reader's units, rounded to what they can bear, with the unit's word.
 
 use super::numbers::{date, fixed, precision, signed, trimmed};
-use crate::basin::{GradientForm, PrecipitationGradient};
+use crate::basin::{GradientForm, PrecipitationGradient, TemperatureGradient};
 use crate::calendar::WaterYearStart;
 use crate::season::{Kind, Outcome};
 use crate::units::UnitSystem;
@@ -114,6 +114,27 @@ impl Reader {
     pub fn percent_per_degree(self, pct_per_c: f64) -> String {
         let unit = self.units.percent_per_degree();
         format!("{} {}", signed(unit.of(pct_per_c), 1), unit.word)
+    }
+
+    /// `−6 °C per km`; `−5 °C per km for minima, −7 °C per km for maxima`.
+    pub fn temperature_gradient(self, gradient: &TemperatureGradient) -> String {
+        let TemperatureGradient { tmin_c_per_km, tmax_c_per_km } = gradient;
+        if tmin_c_per_km == tmax_c_per_km {
+            return self.gradient_of_months(tmin_c_per_km);
+        }
+        let [minima, maxima] = [tmin_c_per_km, tmax_c_per_km].map(|months| self.gradient_of_months(months));
+        format!("{minima} for minima, {maxima} for maxima")
+    }
+
+    /// `−6 °C per km`; `−5, −5.5, ... °C per km from January to December`.
+    fn gradient_of_months(self, months: &[f64; 12]) -> String {
+        let unit = self.units.temperature_gradient();
+        let said = |c_per_km: &f64| trimmed(&fixed(unit.of(*c_per_km), 2)).to_owned();
+        if months.iter().all(|month| *month == months[0]) {
+            return format!("{} {}", said(&months[0]), unit.word);
+        }
+        let all: Vec<String> = months.iter().map(said).collect();
+        format!("{} {} from January to December", all.join(", "), unit.word)
     }
 
     /// `+4 % per 100 m, linear in the station's precipitation, constant above 3200 m`.
@@ -292,5 +313,33 @@ mod tests {
         );
         assert_eq!(metric.precipitation_gradient(&compound), "+4 % per 100 m, compounded");
         assert_eq!(us.precipitation_gradient(&compound), "+12.7 % per 1000 ft, compounded");
+    }
+
+    /// By hand: -6 degC per km are -10.8 degF per 3280.84 ft, -3.29 per 1000 ft; -5 are -2.74, and -2.5 are -1.37.
+    #[test]
+    fn temperature_gradients_are_one_by_month_or_two() {
+        let [metric, us] = [UnitSystem::Metric, UnitSystem::Us].map(reader);
+        let constant = TemperatureGradient::constant(-6.0);
+        assert_eq!(
+            [metric, us].map(|reader| reader.temperature_gradient(&constant)),
+            ["−6 °C per km", "−3.29 °F per 1000 ft"]
+        );
+        let apart = TemperatureGradient { tmin_c_per_km: [-5.0; 12], ..TemperatureGradient::constant(-6.0) };
+        assert_eq!(
+            [metric, us].map(|reader| reader.temperature_gradient(&apart)),
+            [
+                "−5 °C per km for minima, −6 °C per km for maxima",
+                "−2.74 °F per 1000 ft for minima, −3.29 °F per 1000 ft for maxima"
+            ]
+        );
+        let mut months = [-6.0; 12];
+        months[11] = -2.5;
+        let by_month = TemperatureGradient { tmin_c_per_km: months, tmax_c_per_km: months };
+        let sixes = "−6, ".repeat(11);
+        assert_eq!(
+            metric.temperature_gradient(&by_month),
+            format!("{sixes}−2.5 °C per km from January to December")
+        );
+        assert!(us.temperature_gradient(&by_month).ends_with(", −1.37 °F per 1000 ft from January to December"));
     }
 }

@@ -124,3 +124,27 @@ fn the_plain_gradient_holds_for_those_that_have_none_of_their_own() {
     assert_eq!(swe(&format!("{PLAIN}{tmax}-7\n").replace("-6.0", "-4")), apart);
     assert_ne!(swe(&format!("{tmin}-7\n{tmax}-4\n")), apart);
 }
+
+/// `check` and the page tell the temperature gradient, in the units of the reader: -6 degC per km are -10.8 degF per
+/// 3280.84 ft, by hand -3.29 per 1000 ft.
+#[test]
+fn the_temperature_gradient_is_told() {
+    let apart = "tmin_temperature_gradient_c_per_km = -5\ntmax_temperature_gradient_c_per_km = -6\n";
+    let (of_minima, of_maxima) = ("−2.74 °F per 1000 ft for minima", "−3.29 °F per 1000 ft for maxima");
+    let us = "\n[report]\nunits = \"us\"\n";
+    for (keys, units, words) in [
+        (PLAIN, "", "−6 °C per km".to_owned()),
+        (PLAIN, us, "−3.29 °F per 1000 ft".to_owned()),
+        (apart, us, format!("{of_minima}, {of_maxima}")),
+    ] {
+        let basin = Basin::new();
+        basin.exchange(PLAIN, keys);
+        basin.exchange("count = 12\nyears = 5\n", &format!("count = 6\nyears = 3\n{units}"));
+        let checked = basin.run("check scenario.toml").stdout;
+        let line = checked.lines().find(|line| line.contains("temperature gradient")).unwrap_or_default();
+        assert!(line.ends_with(&format!(" {words}")), "{line}");
+        let ended = basin.run("study scenario.toml --into out --quiet");
+        assert_eq!(ended.status, 0, "{}", ended.stderr);
+        assert!(basin.read("out/briefing.html").contains(&format!("by {words}, precipitation by ")), "{words}");
+    }
+}

@@ -33,7 +33,8 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             dt { "Gauge" } dd { "what was caught times " (study.gauge_multiplier.snow) " for snow and " (study.gauge_multiplier.rain)
                 " for rain, once, at the observed "
                 @if snow.options.wet_bulb { "wet-bulb " } "temperature" }
-            dt { "Elevation" } dd { "station at " (reader.elevation(study.station_elevation_m)) "; precipitation changes with elevation by "
+            dt { "Elevation" } dd { "station at " (reader.elevation(study.station_elevation_m)) "; temperature changes with elevation by "
+                (reader.temperature_gradient(&study.basin.temperature)) ", precipitation by "
                 (reader.precipitation_gradient(&study.basin.precipitation)) "; the basin's mean is "
                 (fixed(study.basin.precipitation_ratio(study.station_elevation_m), 2)) " times the station's, so "
                 (reader.amount(study.basin.precipitation_ratio(study.station_elevation_m) * study.record.mean_precipitation_mm)) " a year"

@@ -102,6 +102,7 @@ impl Checked<'_> {
                 degrees(means.month_c[6])
             ),
         );
+        page.line("temperature gradient", reader.temperature_gradient(&self.basin.temperature));
         let survey = self.season.survey_dates.first().map_or(String::new(), |day| day.words());
         let start = self.season.water_year_starts.0.words();
         let mean =
