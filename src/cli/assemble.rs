@@ -316,8 +316,15 @@ impl Ready {
 
     /// What a study measures of every year.
     pub fn measures(&self) -> Measures {
-        let measures = Measures::new(self.scenario.season.clone(), self.basin.area_km2());
-        if self.scenario.snow.options.sublimation.is_some() { measures.with_sublimation() } else { measures }
+        let options = self.scenario.snow.options;
+        let mut measures = Measures::new(self.scenario.season.clone(), self.basin.area_km2());
+        if options.sublimation.is_some() {
+            measures = measures.with_sublimation();
+        }
+        if options.start_bare_each_year {
+            measures = measures.with_snow_taken_away();
+        }
+        measures
     }
 
     /// Lanes of every band under each change, and a basin mean for each.

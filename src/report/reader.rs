@@ -340,6 +340,8 @@ mod tests {
             metric.temperature_gradient(&by_month),
             format!("{sixes}−2.5 °C per km from January to December")
         );
-        assert!(us.temperature_gradient(&by_month).ends_with(", −1.37 °F per 1000 ft from January to December"));
+        assert!(
+            us.temperature_gradient(&by_month).ends_with(", −1.37 °F per 1000 ft from January to December")
+        );
     }
 }

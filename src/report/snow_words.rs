@@ -83,7 +83,9 @@ pub(super) fn options(reader: Reader, snow: &SnowParams) -> Vec<(&'static str, S
         words.push(("Sublimation", format!("the air takes {by_day}, and {share} % of each day's snowfall")));
     }
     if options.start_bare_each_year {
-        let words_of_it = "every water year begins without snow, whatever the year before left".to_owned();
+        let words_of_it = "every water year begins without snow, whatever the year before left: that is taken \
+                           away, is no part of water input, and is counted as snow taken away at the year's end"
+            .to_owned();
         words.push(("Each year bare", words_of_it));
     }
     words

@@ -20,6 +20,7 @@ mod rows;
 mod state;
 mod sublimation;
 mod sums;
+mod taken_away;
 
 pub use crate::snow::BARE_MM;
 pub use cover::{SEASONAL_COVER_DAYS, is_seasonal, longest_cover_days};
@@ -96,6 +97,9 @@ static FAMILIES: &[Family] = &[
 /// The family that is taken only of snow that the air can take.
 static OF_SUBLIMATION: Family = Family { list: sublimation::list, take: sublimation::take };
 
+/// The family that is taken only where every year begins on bare ground.
+static OF_SNOW_TAKEN_AWAY: Family = Family { list: taken_away::list, take: taken_away::take };
+
 /// What is asked of every year.
 struct Asked {
     settings: SeasonSettings,
@@ -129,9 +133,18 @@ impl Measures {
     }
 
     /// The same, and what the air takes of the snow.
-    pub fn with_sublimation(mut self) -> Self {
-        let more = (OF_SUBLIMATION.list)(&self.asked.settings);
-        self.families.push((&OF_SUBLIMATION, more.len()));
+    pub fn with_sublimation(self) -> Self {
+        self.with(&OF_SUBLIMATION)
+    }
+
+    /// The same, and the snow that is taken away as a year ends.
+    pub fn with_snow_taken_away(self) -> Self {
+        self.with(&OF_SNOW_TAKEN_AWAY)
+    }
+
+    fn with(mut self, family: &'static Family) -> Self {
+        let more = (family.list)(&self.asked.settings);
+        self.families.push((family, more.len()));
         self.list.extend(more);
         self
     }

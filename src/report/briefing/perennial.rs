@@ -17,7 +17,10 @@ pub(super) fn paragraph(study: &Study<'_>) -> Markup {
             (fixed(100.0 * of_band.years_not_gone as f64 / of_band.years as f64, 1)) " % of the years"
         }
         "."
-        @if starts_bare { " Every water year begins bare all the same, so none of it counts in the next." } @else {
+        @if starts_bare {
+            " Every water year begins bare all the same, so none of it counts in the next; how much of it there is stands below \
+             and in the tables as snow taken away at the year's end."
+         } @else {
             " It is carried into the next year and counts in that year's SWE and outflow; the model makes no ice of it. With "
             code { "start_bare_each_year = true" } " in " code { "[snow]" } " every year begins without."
         }
