@@ -8,6 +8,7 @@ use crate::baseline::{
     BASELINE_YEARS_KEY, Baseline, BaselineChoice, BaselineYears, Detrended, LEAST_YEARS, detrend,
 };
 use crate::basin::{Basin, GroundStated};
+use crate::ensemble::{BandClimate, WinterMonths, band_climates, snow_that_piles_up};
 use crate::fault::{Fault, Unlikely};
 use crate::fit::{Comparison, Model, Site, compare};
 use crate::observed::Observations;
@@ -36,6 +37,8 @@ pub(super) struct Ready {
     pub baseline: Option<Baseline>,
     /// The years whose median is the normal.
     pub baseline_years: BaselineYears,
+    /// The record band by band, without any warming.
+    pub climates: Vec<BandClimate>,
     pub unlikely: Vec<Unlikely>,
     pub defaults: Vec<DefaultInForce>,
     /// What was observed at each site of the scenario.
@@ -128,7 +131,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             unlikely.extend(of_generator);
             let mut defaults = draft.defaults;
             note_baseline_years(&baseline_years, &mut defaults);
-            let ready = Ready {
+            let mut ready = Ready {
                 scenario,
                 basin,
                 record,
@@ -137,12 +140,14 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 detrended,
                 baseline,
                 baseline_years,
+                climates: Vec::new(),
                 unlikely,
                 defaults,
                 observed: observations,
                 files,
                 stem,
             };
+            ready.look_at_the_bands()?;
             Ok(ready)
         }
         _ => Err(refused(&faults, &file, shared)),
@@ -238,6 +243,18 @@ fn mean_yearly_mm(weather: &Series) -> f64 {
 }
 
 impl Ready {
+    /// Runs the record, and says what piles up in it.
+    fn look_at_the_bands(&mut self) -> Result<(), Failure> {
+        let winter = WinterMonths::of(self.basin.is_southern());
+        self.climates = band_climates(&self.lanes(&[MonthlyChange::NONE]), &self.weather, winter)
+            .map_err(|open| Failure::Ours(open.to_string()))?;
+        if !self.scenario.snow.options.start_bare_each_year {
+            let years = self.weather.years.len();
+            self.unlikely.extend(snow_that_piles_up(&self.climates, &self.basin.shares(), years));
+        }
+        Ok(())
+    }
+
     /// What was read and the command that repeats it, without the flags that change no result.
     pub fn origin(&self, command: &str, path: &Path, shared: &Shared) -> Origin {
         let seed = shared.seed.map_or(String::new(), |seed| format!(" --seed {seed}"));

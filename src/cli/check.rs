@@ -9,9 +9,8 @@ use super::pool::in_pool;
 use super::progress::{Progress, mind_interrupts};
 use super::runs::halted;
 use crate::baseline::Seasons;
-use crate::ensemble::{BandClimate, Watch, WinterMonths, band_climates};
+use crate::ensemble::Watch;
 use crate::findings::GeneratorSheet;
-use crate::perturb::MonthlyChange;
 use crate::report::Checked;
 use crate::report::numbers::counted;
 use std::path::Path;
@@ -20,11 +19,8 @@ use std::path::Path;
 pub(super) fn run(path: &Path, with_sheet: bool, shared: &Shared) -> Result<(), Failure> {
     let ready = assemble(path, shared)?;
     let seasons = Seasons::of(&ready.weather, ready.scenario.season.survey_dates[0]);
-    let winter = WinterMonths::of(ready.basin.is_southern());
-    let climates = band_climates(&ready.lanes(&[MonthlyChange::NONE]), &ready.weather, winter)
-        .map_err(|open| Failure::Ours(open.to_string()))?;
     let sheet = if with_sheet { Some(sheet(&ready, shared)?) } else { None };
-    let checked = describe(&ready, &seasons, &climates, sheet.as_ref());
+    let checked = describe(&ready, &seasons, sheet.as_ref());
     if shared.json {
         return output::print_json(&checked.document());
     }
@@ -53,7 +49,6 @@ fn sheet(ready: &Ready, shared: &Shared) -> Result<GeneratorSheet, Failure> {
 fn describe<'a>(
     ready: &'a Ready,
     seasons: &'a Seasons,
-    climates: &'a [BandClimate],
     generator: Option<&'a GeneratorSheet>,
 ) -> Checked<'a> {
     let scenario = &ready.scenario;
@@ -69,7 +64,7 @@ fn describe<'a>(
         station_precipitation_mm: ready.mean_precipitation_mm(),
         station_snow_fraction: ready.station_snow_fraction(),
         seasons,
-        climates,
+        climates: &ready.climates,
         baseline: ready.baseline.as_ref(),
         baseline_years: &ready.baseline_years,
         detrended: ready.detrended.as_ref(),

@@ -1,5 +1,6 @@
 //! What the record's weather is like band by band, as observed: winter against freezing, snow against rain.
 
+use crate::fault::Unlikely;
 use crate::season::{is_seasonal, keeps_snow, longest_cover_days};
 use crate::snow::{Engine, Lanes, OpenLedger};
 use crate::weather::Series;
@@ -86,4 +87,39 @@ pub fn band_climates(
         climate.winter_freezing_share /= winter_days;
     }
     Ok(climates)
+}
+
+/// Says so where the record leaves bands under snow the year round in most of its years, each with its share of the basin's
+/// area: what lasts is carried on and piles up from year to year, and a warming then melts what decades have left.
+pub fn snow_that_piles_up(climates: &[BandClimate], shares: &[f64], years: usize) -> Option<Unlikely> {
+    let of_bands = climates.iter().zip(shares).filter(|(climate, _)| 2 * climate.years_not_gone > years);
+    let (bands, share) = of_bands.fold((0, 0.0), |(bands, sum), (_, share)| (bands + 1, sum + share));
+    let pct = (100.0 * share).round().max(1.0);
+    let which = if bands == 1 { "a band".to_owned() } else { format!("{bands} bands") };
+    let why = format!(
+        "in most of the record's years the snow never goes from {which} with {pct:.0} % of the basin's area; it is carried into \
+         the next year and piles up, and the model makes no ice of it: with snow.start_bare_each_year = true it is taken \
+         away as each year ends"
+    );
+    (bands > 0).then(|| Unlikely::new("snow.start_bare_each_year", why))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    /// By hand: of 4 years more than 2 are most; bands of 20 and 5 % of the area make 25 %.
+    #[test]
+    fn snow_that_lasts_in_most_years_is_said_with_its_area() {
+        let bands = |not_gone: [usize; 3]| {
+            not_gone.map(|years_not_gone| BandClimate { years_not_gone, ..BandClimate::default() })
+        };
+        let shares = [0.75, 0.2, 0.05];
+        let said = |not_gone| {
+            snow_that_piles_up(&bands(not_gone), &shares, 4).map_or(String::new(), |said| said.why)
+        };
+        assert_eq!(said([0, 2, 2]), "");
+        assert!(said([0, 2, 3]).contains("never goes from a band with 5 % of the basin's area"));
+        assert!(said([0, 3, 4]).contains("never goes from 2 bands with 25 % of the basin's area"));
+    }
 }

@@ -12,7 +12,7 @@ mod survey_swe;
 mod swe_days;
 mod watch;
 
-pub use climate::{BandClimate, WinterMonths, band_climates};
+pub use climate::{BandClimate, WinterMonths, band_climates, snow_that_piles_up};
 pub use plan::{LevelGroup, Plan};
 pub use record::{RecordRun, RecordYear};
 pub use run::{run, run_records};

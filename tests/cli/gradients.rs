@@ -145,6 +145,9 @@ fn the_temperature_gradient_is_told() {
         assert!(line.ends_with(&format!(" {words}")), "{line}");
         let ended = basin.run("study scenario.toml --into out --quiet");
         assert_eq!(ended.status, 0, "{}", ended.stderr);
-        assert!(basin.read("out/briefing.html").contains(&format!("by {words}, precipitation by ")), "{words}");
+        assert!(
+            basin.read("out/briefing.html").contains(&format!("by {words}, precipitation by ")),
+            "{words}"
+        );
     }
 }

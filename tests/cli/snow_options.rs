@@ -192,14 +192,66 @@ fn snow_that_never_goes_is_named_and_can_be_left_behind() {
         };
         let check = basin.run("check scenario.toml").stdout;
         assert!(check.contains("snow that never went"), "{check}");
+        let says_so = check
+            .split_whitespace()
+            .collect::<Vec<_>>()
+            .join(" ")
+            .contains("it is carried into the next year and piles up");
+        assert_eq!(says_so, more.is_empty(), "{check}");
         assert!(page.contains("Snow that lasts through the water year's end at the reference: band "));
         (swe, page)
     };
     let (kept, page) = carried("");
     assert!(page.contains("It is carried into the next year"));
+    let piles_up = "the snow never goes from 2 bands with 100 % of the basin's area";
+    assert!(page.contains(piles_up) && page.contains("with snow.start_bare_each_year = true"));
     let (bare, page) = carried("start_bare_each_year = true");
     assert!(page.contains("Every water year begins bare all the same"));
+    assert!(!page.contains(piles_up), "what is taken away does not pile up");
     assert!(kept[366] > bare[366] && kept[..300] == bare[..300], "the first year alone is the same");
+}
+
+/// The snow that is taken away stands in the tables and on the page, and closes the year's water: what fell is what reached the
+/// ground and what was taken away. One year, so that a median is the year itself.
+#[test]
+fn snow_taken_away_closes_the_years_water() {
+    let cold = "degree_day_factor_mm_per_c_day = { lowest = 0, highest = 0.05 }";
+    let basin = with(&format!("[snow]\n{cold}\nstart_bare_each_year = true"));
+    basin.exchange("count = 12\nyears = 5", "count = 1\nyears = 1");
+    basin.append("\n[season]\nsurvey_dates = [\"04-01\", \"09-30\"]\n");
+    // Nothing falls on the year's last day, so that what fell before it is the year's.
+    let dry = |row: &str| match (row.contains("-09-30,"), row.rsplit_once(',')) {
+        (true, Some((rest, _))) => format!("{rest},0.0\n"),
+        _ => format!("{row}\n"),
+    };
+    basin.write("weather.csv", &weather(3).lines().map(dry).collect::<String>());
+    let ended = basin.run("study scenario.toml --into out --quiet");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    let table = basin.read("out/tables/basin-amounts.csv");
+    let header: Vec<&str> = table.lines().next().unwrap().split(',').collect();
+    let median = header.iter().position(|column| *column == "q50_mm").unwrap();
+    let mm = |measure: &str, level: &str| -> f64 {
+        let of_it = format!("{measure},{level},");
+        let row =
+            table.lines().find(|row| row.starts_with(&of_it)).unwrap_or_else(|| panic!("{of_it} in {table}"));
+        row.split(',').nth(median).unwrap().parse().unwrap()
+    };
+    for level in ["0", "2"] {
+        let [input, taken, fallen] =
+            ["water_input_year_mm", "snow_taken_away_mm", "precipitation_before_09_30_mm"]
+                .map(|name| mm(name, level));
+        assert!(
+            taken > 10.0 && (fallen - input - taken).abs() < 1e-9 * fallen,
+            "{fallen} mm: {input} and {taken}"
+        );
+    }
+    assert!(mm("snow_taken_away_mm", "0") > mm("snow_taken_away_mm", "2"), "less is left when it is warmer");
+    let page = basin.read("out/briefing.html");
+    assert!(page.contains("snow taken away at the year's end</th>"), "a row of the table by level");
+    assert!(page.contains("is no part of water input, and is counted as snow taken away at the year's end"));
+    let plain = Basin::new();
+    assert_eq!(plain.run("study scenario.toml --into out --quiet").status, 0);
+    assert!(!plain.read("out/tables/basin-amounts.csv").contains("snow_taken_away_mm"));
 }
 
 /// All faults of the options in one go.

@@ -91,9 +91,8 @@ mean_change_sd_pct = 8.0
 units = "us"
 "#;
 
-const VALUES: [&str; 12] = [
-    "\"x\"", "\"\"", "-1e9", "1e9", "0", "7.5", "nan", "true", "[]", "[1, 2]", "{}", "{ column = \"c\" }",
-];
+const VALUES: [&str; 12] =
+    ["\"x\"", "\"\"", "-1e9", "1e9", "0", "7.5", "nan", "true", "[]", "[1, 2]", "{}", "{ column = \"c\" }"];
 
 /// Without one of its lines, and with each of its values exchanged for others, a scenario is whole or has a fault.
 #[test]
