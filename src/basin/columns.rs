@@ -78,6 +78,14 @@ impl<U: Copy> Column<U> {
         Some(format!("{word} = {{ column = \"{}\", unit = \"{unit}\" }}", own.unwrap_or("...")))
     }
 
+    /// Whether a column of this name is what this reads.
+    pub(super) fn reads(&self, name: &str, units: &[(&'static str, U)]) -> bool {
+        match self {
+            Self::Stated { column, .. } => column == name,
+            Self::WithUnit(word) => usual_names(word, units).iter().any(|usual| usual == name),
+        }
+    }
+
     /// Whether the table has such a column, or one is stated.
     pub(super) fn is_there(&self, table: &Table<'_>, units: &[(&'static str, U)]) -> bool {
         match self {

@@ -86,6 +86,12 @@ impl Basin {
         (steep > 0).then(|| Unlikely::new("basin.bands", why))
     }
 
+    /// Says so where melt is to go with the sun on the slopes and no band slopes.
+    pub fn level_under_the_sun(&self) -> Option<Unlikely> {
+        let why = "no band slopes, so all ground is taken as level: slope_deg and aspect_deg in the bands' file say otherwise";
+        (!GroundStated::of(&self.bands).slope).then(|| Unlikely::new("snow.radiation", why))
+    }
+
     /// What the file of the bands says of their ground and none of the options that are on has a use for; `uses` is what they
     /// have a use for.
     pub fn unused_ground(&self, uses: GroundStated) -> Vec<Unlikely> {

@@ -8,6 +8,7 @@ mod ground;
 mod ground_columns;
 mod reach;
 mod told_apart;
+mod unread;
 
 pub use bands::{Band, BandColumns, read_bands};
 pub use columns::Column;
@@ -17,6 +18,7 @@ pub use ground::{Ground, GroundStated};
 pub use ground_columns::{ANGLE_NAMES, GroundColumns, VARIATION_NAMES};
 pub use reach::BeyondStations;
 pub use told_apart::told_apart;
+pub use unread::Unread;
 
 use crate::fault::Unlikely;
 

@@ -104,16 +104,19 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 return Err(refused(&faults, &file, shared));
             };
             let baseline = Baseline::of(&weather, survey);
+            let of_columns = scenario.basin.hypsometry.unlikely(&bands_file.name, &bands_file.text);
             let mut files = vec![file.clone(), bands_file, weather_file];
             let mut unlikely = draft.unlikely;
             unlikely.extend(record.unlikely(basin.is_southern()));
             let station_m = scenario.weather.station_elevation_m;
+            unlikely.extend(of_columns);
             unlikely.extend(basin.unlikely(station_m));
             unlikely.extend(basin.unused_ground(GroundStated {
                 slope: scenario.snow.options.radiation.is_some(),
                 canopy: true,
                 variation: scenario.snow.options.patchiness.is_some(),
             }));
+            unlikely.extend(scenario.snow.options.radiation.and_then(|_| basin.level_under_the_sun()));
             unlikely.extend(scenario.warming.warming.unlikely_in(&basin));
             unlikely
                 .extend(baseline.iter().flat_map(|baseline| baseline.unlikely(scenario.weather.detrend_to)));

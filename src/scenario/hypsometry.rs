@@ -2,12 +2,13 @@
 
 use super::elevation::Height;
 use super::format::read_layout;
+use super::nearest::nearest;
 use super::section::Section;
 use crate::basin::{
-    ANGLE_NAMES, Band, BandColumns, Column, CurveColumns, GroundColumns, VARIATION_NAMES, read_bands,
+    ANGLE_NAMES, Band, BandColumns, Column, CurveColumns, GroundColumns, Unread, VARIATION_NAMES, read_bands,
     read_curve,
 };
-use crate::fault::Fault;
+use crate::fault::{Fault, Unlikely};
 use crate::table::Encoding;
 use crate::units::{AreaUnit, LengthUnit, ShareUnit};
 
@@ -36,6 +37,27 @@ impl HypsometryTyped {
         }
     }
 
+    /// Columns of the file that are not read although their names come near to one that says what lies under the snow.
+    pub fn unlikely(&self, file: &str, text: &str) -> Vec<Unlikely> {
+        let Form::Bands(columns) = &self.form else { return Vec::new() };
+        let Some(Unread { columns, ground_without_column }) = columns.unread(file, text) else {
+            return Vec::new();
+        };
+        let meant = |name: &str| {
+            let word = ground_without_column.iter().find(|words| shares_a_word(name, words));
+            let usual: Vec<String> = ground_without_column.iter().map(|words| words.join("_")).collect();
+            let near =
+                nearest(name, usual.iter().map(String::as_str)).filter(|_| name.len() >= LEAST_LETTERS);
+            word.map(|words| words.join("_")).or(near.map(str::to_owned))
+        };
+        let unread = columns.iter().filter_map(|name| Some((name, meant(name)?)));
+        let why = |(name, meant): (&String, String)| {
+            let why = format!("the column '{name}' of {file} is not used; did you mean {meant}?");
+            Unlikely::new(self.key, why)
+        };
+        unread.map(why).collect()
+    }
+
     /// The bands that the file's text holds.
     ///
     /// # Errors
@@ -46,6 +68,16 @@ impl HypsometryTyped {
             Form::Curve(columns) => read_curve(file, text, columns),
         }
     }
+}
+
+/// A name of fewer letters comes near to anything.
+const LEAST_LETTERS: usize = 4;
+
+/// Whether one of a name's words, capitals or not, is that of a ground column; a unit is none, but for a variation's.
+fn shares_a_word(name: &str, [word, unit]: &[&str; 2]) -> bool {
+    let name = name.to_lowercase();
+    let mut words = name.split(|sign: char| !sign.is_alphanumeric());
+    words.any(|of_name| of_name == *word || of_name == *unit && *unit == "cv")
 }
 
 /// The height of the bands to cut from a curve.

@@ -46,7 +46,7 @@ impl Table<'_> {
     pub(super) fn no_column(&self, name: &str) -> Fault {
         let hint = self.elsewhere(&[name]).or_else(|| self.nearly(name));
         let mend = hint.or_else(|| self.no_names_here()).unwrap_or_else(|| {
-            format!("name one of the columns that stand there, letter for letter:\n{}", self.names())
+            format!("name one of the columns that stand there, letter for letter:\n{}", self.listed_names())
         });
         self.lacking(format!("{NO_COLUMN}'{name}'"), mend)
     }
@@ -54,7 +54,8 @@ impl Table<'_> {
     /// The fault of a column that is called by none of the names it goes by unless the scenario names it; `advice` says how.
     pub fn no_usual_column(&self, names: &[&str], advice: &str) -> Fault {
         let hint = self.elsewhere(names).or_else(|| self.no_names_here());
-        let mend = hint.unwrap_or_else(|| format!("{advice}\nThe file's columns are:\n{}", self.names()));
+        let mend =
+            hint.unwrap_or_else(|| format!("{advice}\nThe file's columns are:\n{}", self.listed_names()));
         self.lacking(format!("{NO_COLUMN}'{}'", names.join("' or '")), mend)
     }
 
@@ -99,7 +100,7 @@ impl Table<'_> {
     }
 
     /// The columns' names, one a line.
-    fn names(&self) -> String {
+    fn listed_names(&self) -> String {
         let shown = self.header.iter().take(MOST_NAMES).map(|name| format!("  {}", one_line(name)));
         let more = self.header.len().saturating_sub(MOST_NAMES);
         let rest = (more > 0).then(|| format!("  and {more} more"));

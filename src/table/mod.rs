@@ -110,6 +110,11 @@ impl<'a> Table<'a> {
         self.header.iter().any(|have| have == name)
     }
 
+    /// The columns' names, in order.
+    pub fn names(&self) -> impl Iterator<Item = &str> {
+        self.header.iter()
+    }
+
     /// The name of the only column whose name holds a word, capitals or not.
     pub fn the_only_column_with(&self, word: &str) -> Option<&str> {
         let mut with = self.header.iter().filter(|name| name.to_lowercase().contains(word));

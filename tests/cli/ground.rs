@@ -123,3 +123,56 @@ fn check_has_the_ground_of_each_band() {
     );
     assert_eq!((&ground(1)["slope_deg"], &ground(1)["aspect_deg"]), (&25.5.into(), &180.0.into()));
 }
+
+/// What `check` finds worth a second look in a basin with these columns beside the edges and the area, all of them 0.
+fn second_looks(columns: &str, more: &str) -> String {
+    let basin = Basin::new();
+    let zeros = ",0".repeat(columns.split(',').count());
+    basin.write(
+        "bands.csv",
+        &format!("lower_m,upper_m,area_km2,{columns}\n1900,2200,40{zeros}\n2200,2500,25{zeros}\n"),
+    );
+    basin.append(more);
+    let ended = basin.run("check scenario.toml");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    let said = ended.stdout.lines().skip_while(|line| !line.starts_with("Worth a second look"));
+    said.collect::<Vec<_>>().join(" ").split_whitespace().collect::<Vec<_>>().join(" ")
+}
+
+/// A column that is read under another name only is said, with the name that it may have been meant to have; what is read and
+/// what is far from any is not.
+#[test]
+fn ground_columns_that_are_misspelt_have_a_second_look() {
+    let near = [
+        ("canopy", "canopy_fraction"),
+        ("canopy_frac", "canopy_fraction"),
+        ("Canopy Cover", "canopy_fraction"),
+        ("snow_cv", "accumulation_cv"),
+        ("slope", "slope_deg"),
+        ("slop_deg", "slope_deg"),
+        ("aspect", "aspect_deg"),
+    ];
+    for (typed, meant) in near {
+        let said = second_looks(typed, "");
+        assert!(
+            said.contains(&format!("'{typed}' of bands.csv is not used; did you mean {meant}?")),
+            "{said}"
+        );
+    }
+    for silent in
+        ["canopy_pct", "canopy_fraction,canopy_height", "name", "n", "glacier", "degrees", "mean area"]
+    {
+        assert_eq!(second_looks(silent, ""), "Worth a second look: nothing", "{silent}");
+    }
+}
+
+/// Radiation goes with the slope: without one it is told that there is none.
+#[test]
+fn radiation_without_slopes_has_a_second_look() {
+    let level = "snow.radiation: no band slopes, so all ground is taken as level";
+    assert!(second_looks("name", "\n[snow.radiation]\n").contains(level));
+    let basin = split();
+    basin.append("\n[snow.radiation]\n");
+    let said = basin.run("check scenario.toml").stdout;
+    assert!(said.contains("Worth a second look: nothing"), "{said}");
+}
