@@ -40,7 +40,7 @@ pub(super) enum Command {
     Daily {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
-        /// Draw these water years, too: 2011, or 2010-2012; needs --into
+        /// Draw these water years, too, at most 5: 2011, or 2010-2012; needs --into
         #[arg(long, value_name = "YEARS")]
         draw_years: Option<WaterYears>,
         /// Of which place: basin, a band by its number from the lowest, 1, or a site with observed snow by its name

@@ -50,9 +50,13 @@ pub(super) fn run(path: &Path, asked: Option<&Asked>, shared: &Shared) -> Result
         daily_csv(&lanes, site, &ready.weather, &mut table).map_err(failure)?;
         let mut files = vec![("daily.csv".to_owned(), table)];
         files.extend(of_observed_snow(&ready, &comparisons)?);
-        if let Some(picture) = &picture {
-            files.extend(drawn(picture, &ready, &lanes, site.map(|(_, lanes)| lanes))?);
-        }
+        let figures = match &picture {
+            Some(picture) => drawn(picture, &ready, &lanes, site.map(|(_, lanes)| lanes))?,
+            None => Vec::new(),
+        };
+        let figures_at: Vec<String> =
+            figures.iter().map(|(name, _)| into.join(name).display().to_string()).collect();
+        files.extend(figures);
         let names: Vec<&str> = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
         let command = format!("daily{}", picture.as_ref().map_or("", Picture::flags));
         let manifest = daily_manifest_json(&ready.origin(&command, path, shared), &names);
@@ -66,7 +70,11 @@ pub(super) fn run(path: &Path, asked: Option<&Asked>, shared: &Shared) -> Result
         publish(&files, into).map_err(|error| unpublished(&error))?;
         if !shared.quiet {
             say(&comparisons, ready.reader());
+            output::complain(&picture.as_ref().and_then(Picture::left_out).unwrap_or_default());
             output::complain(&format!("daily table: {}\n", into.join("daily.csv").display()));
+            for figure in figures_at {
+                output::complain(&format!("figure: {figure}\n"));
+            }
         }
         return Ok(());
     }
@@ -109,7 +117,7 @@ fn drawn(
     of_site: Option<&Lanes>,
 ) -> Result<Vec<ReportFile>, Failure> {
     let days = picture.days(bands, of_site).map_err(|open| Failure::Ours(open.to_string()))?;
-    let figures = of_days(&days, &setting(ready)).into_iter();
+    let figures = of_days(&days, picture.apart(), &setting(ready)).into_iter();
     Ok(figures.map(|(slug, svg)| (format!("figures/{slug}.svg"), svg.text.into_bytes())).collect())
 }
 

@@ -26,11 +26,11 @@ const DAY_STEPS: usize = 5;
 /// Height of the line that names axis and lines, px.
 const NAMES_PX: f64 = 26.0;
 
-fn draw(days: &PlaceDays, setting: &Setting<'_>) -> Option<Svg> {
+fn draw(days: &PlaceDays, apart: Option<&str>, setting: &Setting<'_>) -> Option<Svg> {
     if days.years.is_empty() {
         return None;
     }
-    let words = Words::of(days, setting.units);
+    let words = Words::of(days, apart, setting.units);
     let text = paint(days, setting, &words).ok()?;
     Some(Svg { text, alt: words.alt, caption: words.caption, title: words.title })
 }

@@ -117,8 +117,8 @@ pub struct DaysFigure {
     pub slug: &'static str,
     /// The question that it answers.
     pub question: &'static str,
-    /// Draws it; nothing without a year.
-    pub draw: fn(&PlaceDays, &Setting<'_>) -> Option<Svg>,
+    /// Draws it, with the words that tell a band from the others of its range; nothing without a year.
+    pub draw: fn(&PlaceDays, Option<&str>, &Setting<'_>) -> Option<Svg>,
 }
 
 /// Every figure of a place's days.
@@ -127,9 +127,9 @@ pub const DAYS_FIGURES: [DaysFigure; 1] = [daily::FIGURE];
 /// More water years than this are not told apart in one of them.
 pub const MOST_YEARS_OF_DAYS: usize = 5;
 
-/// Draws every figure of a place's days, each with its name.
-pub fn of_days(days: &PlaceDays, setting: &Setting<'_>) -> Vec<(&'static str, Svg)> {
-    let draw = |figure: &DaysFigure| Some((figure.slug, (figure.draw)(days, setting)?));
+/// Draws every figure of a place's days, each with its name; `apart` tells a band from the others of its range.
+pub fn of_days(days: &PlaceDays, apart: Option<&str>, setting: &Setting<'_>) -> Vec<(&'static str, Svg)> {
+    let draw = |figure: &DaysFigure| Some((figure.slug, (figure.draw)(days, apart, setting)?));
     DAYS_FIGURES.iter().filter_map(draw).collect()
 }
 

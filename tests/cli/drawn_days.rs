@@ -1,6 +1,6 @@
 //! Days of some water years of one place, drawn beside the daily table.
 
-use super::basin::Basin;
+use super::basin::{Basin, weather};
 use serde_json::Value;
 
 const SITE: &str = r#"
@@ -125,7 +125,7 @@ fn observed_snow_belongs_to_its_band() {
     for (band, said, dots) in [
         ("1", "observed at Heron Meadow (snow course, 2\u{2009}150 m), which lies within the band", 3),
         ("2", "No site with observed snow lies within the band", 0),
-        ("basin", "of which there is no observed snow", 0),
+        ("basin", "weighted by area; snow is observed at sites, never of a whole basin", 0),
     ] {
         let ended =
             basin.run(&format!("daily scenario.toml --into days --draw-years 2001 --draw-band {band}"));
@@ -151,9 +151,11 @@ fn what_cannot_be_drawn_is_said() {
     let basin = with_site();
     for (words, said) in [
         ("--draw-years 2001", "a figure needs a folder: add --into DIR"),
-        ("--into days --draw-years 1999-2001", "water years 1999-2000 are not in use; in use are 2001-2003"),
+        (
+            "--into days --draw-years 1999-2000",
+            "none of water years 1999-2000 is in use; in use are 2001-2003",
+        ),
         ("--into days --draw-years 2004", "water year 2004 is not in use; in use are 2001-2003"),
-        ("--into days --draw-years 1998-2003", "6 water years; at most 5 fit into one figure"),
         ("--into days --draw-years 2003-2001", "2003 comes after 2001; write 2001-2003"),
         ("--into days --draw-years 03", "'03' is not a water year of four digits"),
         ("--into days --draw-band 1", "--draw-years <YEARS>"),
@@ -169,6 +171,62 @@ fn what_cannot_be_drawn_is_said() {
     }
     let without = Basin::new().run("daily scenario.toml --into days --draw-years 2001 --draw-band top");
     assert!(without.stderr.contains("the scenario has no site with observed snow"), "{}", without.stderr);
+}
+
+/// Years that are not in use are left out of the figure and said; the table and the other years are there, and so is where
+/// the figure lies.
+#[test]
+fn the_years_in_use_are_drawn_and_the_others_said() {
+    let basin = Basin::new();
+    for (years, said) in [
+        ("2000-2002", "not drawn, since it is not in use: water year 2000\n"),
+        ("1999-2002", "not drawn, since they are not in use: water years 1999-2000\n"),
+    ] {
+        let ended = basin.run(&format!("daily scenario.toml --into days --draw-years {years}"));
+        assert_eq!(ended.status, 0, "{}", ended.stderr);
+        assert!(ended.stderr.contains(said), "{}", ended.stderr);
+        assert!(ended.stderr.ends_with("figure: days/figures/daily.svg\n"), "{}", ended.stderr);
+        assert!(
+            title(&basin.read("days/figures/daily.svg"))
+                .starts_with("Basin mean, water years 2001 to 2002: ")
+        );
+        let command = format!("thawline daily --draw-years {years} scenario.toml");
+        assert_eq!(manifest(&basin, "days")["command"], command, "as it was asked for");
+    }
+    let all = basin.run("daily scenario.toml --into days --draw-years 2001-2003");
+    assert!(!all.stderr.contains("not drawn"), "{}", all.stderr);
+}
+
+/// At most five years fit into one figure, and `--help` says so.
+#[test]
+fn five_years_are_the_most() {
+    let basin = Basin::new();
+    basin.write("weather.csv", &weather(6));
+    let ended = basin.run("daily scenario.toml --into days --draw-years 2001-2006");
+    assert_eq!(ended.status, 2);
+    assert!(ended.stderr.contains("6 water years; at most 5 fit into one figure"), "{}", ended.stderr);
+    assert_eq!(basin.run("daily scenario.toml --into days --draw-years 2000-2005").status, 0);
+    assert!(basin.run("daily --help").stdout.contains("at most 5"));
+}
+
+/// Bands of one range are told apart in the title.
+#[test]
+fn the_title_names_the_ground_of_bands_of_one_range() {
+    let basin = Basin::new();
+    basin.write(
+        "bands.csv",
+        "lower_m,upper_m,area_km2,slope_deg,aspect_deg\n1900,2200,20,25,180\n1900,2200,20,25,0\n2200,2500,25,25,0\n",
+    );
+    for (band, named) in [
+        ("2", "Band 2 (1\u{2009}900–2\u{2009}200 m, facing 0°, slope 25°), water year 2001: "),
+        ("3", "Band 3 (2\u{2009}200–2\u{2009}500 m), water year 2001: "),
+    ] {
+        let ended =
+            basin.run(&format!("daily scenario.toml --into days --draw-years 2001 --draw-band {band}"));
+        assert_eq!(ended.status, 0, "{}", ended.stderr);
+        let title = title(&basin.read("days/figures/daily.svg"));
+        assert!(title.starts_with(named), "{title}");
+    }
 }
 
 /// A reader of inches gets inches; the table stays metric.

@@ -2,6 +2,7 @@
 
 use super::super::assemble::{Ready, quoted};
 use super::super::failure::Failure;
+use crate::basin::told_apart;
 use crate::figures::MOST_YEARS_OF_DAYS;
 use crate::fit::{Model, ObservedAt, Place, PlaceDays, Site, place_years, site_lanes};
 use crate::snow::{Lanes, OpenLedger};
@@ -50,8 +51,13 @@ impl WaterYears {
 /// A place and years that there are.
 pub(in super::super) struct Picture<'r> {
     ready: &'r Ready,
-    years: RangeInclusive<i32>,
+    /// The years that were asked for and are in use.
+    years: Vec<i32>,
+    /// The years that were asked for and are not.
+    not_in_use: Vec<i32>,
     place: Place,
+    /// What of its ground tells a band from the others of its range.
+    apart: Option<String>,
     /// The site whose observed snow is drawn.
     site: Option<Site<'r>>,
     flags: String,
@@ -60,17 +66,36 @@ pub(in super::super) struct Picture<'r> {
 impl<'r> Picture<'r> {
     /// Checks what was asked for against the record, the bands and the sites.
     pub fn of(asked: &Asked, ready: &'r Ready) -> Result<Self, Failure> {
-        let years = years_in_use(&asked.years, ready)?;
+        let [years, not_in_use] = years_in_use(&asked.years, ready)?;
         let (place, site) = place_of(asked.place.as_deref(), ready)?;
+        let apart = match &place {
+            Place::Band { number, .. } => told_apart(&ready.basin.bands).swap_remove(number - 1),
+            Place::Basin | Place::Site { .. } => None,
+        };
         let flag =
             asked.place.as_deref().map_or(String::new(), |place| format!(" --draw-band {}", quoted(place)));
         let flags = format!(" --draw-years {}{flag}", asked.years.words());
-        Ok(Self { ready, years, place, site, flags })
+        Ok(Self { ready, years, not_in_use, place, apart, site, flags })
     }
 
     /// The flags that ask for it again.
     pub fn flags(&self) -> &str {
         &self.flags
+    }
+
+    /// What of its ground tells the band that is drawn from the others of its range.
+    pub fn apart(&self) -> Option<&str> {
+        self.apart.as_deref()
+    }
+
+    /// Which of the years that were asked for are not drawn; none where all are.
+    pub fn left_out(&self) -> Option<String> {
+        let years = runs(&self.not_in_use);
+        match self.not_in_use.len() {
+            0 => None,
+            1 => Some(format!("not drawn, since it is not in use: water year {years}\n")),
+            _ => Some(format!("not drawn, since they are not in use: water years {years}\n")),
+        }
     }
 
     /// The site's name and a lane at its elevation, where a site is drawn.
@@ -102,21 +127,21 @@ impl<'r> Picture<'r> {
     }
 }
 
-/// The years, if all of them are in use and there are not too many.
-fn years_in_use(asked: &WaterYears, ready: &Ready) -> Result<RangeInclusive<i32>, Failure> {
+/// The years that are in use, if there are some and not too many, and those that are not.
+fn years_in_use(asked: &WaterYears, ready: &Ready) -> Result<[Vec<i32>; 2], Failure> {
     let in_use: Vec<i32> = ready.weather.years.iter().map(|year| year.water_year).collect();
-    let missing: Vec<i32> = asked.0.clone().filter(|year| !in_use.contains(year)).collect();
+    let (drawn, missing): (Vec<i32>, Vec<i32>) = asked.0.clone().partition(|year| in_use.contains(year));
     let complain =
         |what: String| Err(Failure::CommandLine(format!("--draw-years {}: {what}", asked.words())));
-    let count = asked.0.clone().count();
+    let count = drawn.len();
     if count > MOST_YEARS_OF_DAYS {
         return complain(format!("{count} water years; at most {MOST_YEARS_OF_DAYS} fit into one figure"));
     }
     match missing.as_slice() {
-        [] => Ok(asked.0.clone()),
+        _ if count > 0 => Ok([drawn, missing]),
         [one] => complain(format!("water year {one} is not in use; in use are {}", runs(&in_use))),
         several => {
-            complain(format!("water years {} are not in use; in use are {}", runs(several), runs(&in_use)))
+            complain(format!("none of water years {} is in use; in use are {}", runs(several), runs(&in_use)))
         }
     }
 }

@@ -74,7 +74,7 @@ impl Made {
     fn draw_in(self, units: UnitSystem) -> Svg {
         let water_year_starts = WaterYearStart(MonthDay::new(self.month, 1).unwrap());
         let setting = Setting { study_title: "Alder Fork", units, water_year_starts };
-        of_days(&self.days(), &setting).remove(0).1
+        of_days(&self.days(), None, &setting).remove(0).1
     }
 
     fn draw(self) -> Svg {
@@ -137,6 +137,19 @@ fn titles_say_peak_and_place() {
     assert_eq!(title(Made { years: 1, peak_mm: 0.0, ..PLAIN }), "Basin mean, water year 2010: no snow lies");
 }
 
+/// Two bands of one range have titles of their own, and room for them.
+#[test]
+fn titles_tell_bands_of_one_range_apart() {
+    let days = Made { place: "band", years: 1, ..PLAIN }.days();
+    let water_year_starts = WaterYearStart(MonthDay::new(10, 1).unwrap());
+    let setting = Setting { study_title: "Alder Fork", units: UnitSystem::Metric, water_year_starts };
+    let ground = "facing 180°, slope 25.5°, 45.5 % canopy, no accumulation CV of its own";
+    let svg = of_days(&days, Some(ground), &setting).remove(0).1;
+    assert_texts_apart(ground, &svg.text);
+    let title = format!("Band 3 (1\u{2009}800–2\u{2009}000 m, {ground}), water year 2010: SWE peaks at ");
+    assert!(svg.title.starts_with(&title), "{}", svg.title);
+}
+
 /// By hand, of 2010: 15 snowfalls of 50 mm, 21 rains of 25 mm and 60 days of melt that bring 500 mm; each snowfall and
 /// each rain is a shape of its own, all melt is one.
 #[test]
@@ -175,7 +188,7 @@ fn observed_snow_is_named_or_missed() {
     }
     let starts = WaterYearStart(MonthDay::new(10, 1).unwrap());
     let setting = Setting { study_title: "Alder Fork", units: UnitSystem::Metric, water_year_starts: starts };
-    let unread = of_days(&days, &setting).remove(0).1;
+    let unread = of_days(&days, None, &setting).remove(0).1;
     assert!(unread.caption.contains("There is no reading of these days."), "{}", unread.caption);
-    assert!(of_days(&PlaceDays { years: Vec::new(), ..days }, &setting).is_empty());
+    assert!(of_days(&PlaceDays { years: Vec::new(), ..days }, None, &setting).is_empty());
 }

@@ -19,8 +19,8 @@ pub(super) struct Words {
 }
 
 impl Words {
-    pub fn of(days: &PlaceDays, units: UnitSystem) -> Self {
-        let title = title(days, units);
+    pub fn of(days: &PlaceDays, apart: Option<&str>, units: UnitSystem) -> Self {
+        let title = title(days, apart, units);
         let sample = format!("The record as observed, without any warming. {}", observed(days, units));
         let observed_line = match days.observed.as_ref().map(|observed| observed.kind) {
             None => "",
@@ -54,10 +54,11 @@ pub(super) fn year_note(year: &PlaceYear, units: UnitSystem) -> String {
 }
 
 /// `Band 3 (1 800–2 000 m), water year 2011: SWE peaks at 540 mm on 2 May; the highest reading is 512 mm`.
-fn title(days: &PlaceDays, units: UnitSystem) -> String {
+fn title(days: &PlaceDays, apart: Option<&str>, units: UnitSystem) -> String {
+    let apart = apart.map_or(String::new(), |ground| format!(", {ground}"));
     let place = match &days.place {
         Place::Basin => "Basin mean".to_owned(),
-        Place::Band { number, band: of } => format!("Band {number} ({})", band(units, of)),
+        Place::Band { number, band: of } => format!("Band {number} ({}{apart})", band(units, of)),
         Place::Site { name, elevation_m } => format!("{name} ({})", height(*elevation_m, units)),
     };
     if let [year] = days.years.as_slice() {
@@ -85,7 +86,10 @@ fn title(days: &PlaceDays, units: UnitSystem) -> String {
 /// Whose observed snow is drawn, or why none is.
 fn observed(days: &PlaceDays, units: UnitSystem) -> String {
     match (&days.place, &days.observed) {
-        (Place::Basin, _) => "The mean of all bands by area, of which there is no observed snow.".to_owned(),
+        (Place::Basin, _) => {
+            "The mean of all bands, weighted by area; snow is observed at sites, never of a whole basin."
+                .to_owned()
+        }
         (Place::Band { .. }, None) => {
             "No site with observed snow lies within the band's elevations.".to_owned()
         }
