@@ -213,11 +213,12 @@ impl<'a> Day<'a> {
         }
     }
 
-    /// The covered share as the day ends.
+    /// The covered share as the day ends, over the share of all ground. That is 1 but for its last bits, since shares of area
+    /// add up with rounding; both are added in the same order, so that full cover is 1 to the bit.
     fn covered(&self, of: Of) -> f64 {
         let width = self.block.width;
         let next = &self.block.swe_mm[(self.day + 1) * width..(self.day + 2) * width];
         let covers: Vec<f64> = next.iter().map(|swe_mm| crate::snow::cover(*swe_mm)).collect();
-        self.of_row(&covers, of)
+        self.of_row(&covers, of) / self.of_row(&vec![1.0; width], of)
     }
 }
