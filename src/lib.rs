@@ -11,6 +11,7 @@ pub mod baseline;
 pub mod basin;
 pub mod calendar;
 pub mod cli;
+pub mod defaults;
 pub mod demo;
 pub mod ensemble;
 pub mod fault;

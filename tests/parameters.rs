@@ -27,6 +27,51 @@ fn check(set: fn(&mut RawSnow, f64), value: f64) -> Result<Vec<Unlikely>, Vec<Fa
     SnowParams::check(&raw, true, false).map(|(_, unlikely)| unlikely)
 }
 
+/// What brings a default is named where, and only where, the default is not that of the plain model with daily minima and
+/// maxima, for every choice of options and both rules.
+#[test]
+fn defaults_that_are_not_the_usual_ones_say_what_brings_them() {
+    let plain = SnowParams::check(&RawSnow::default(), true, false).unwrap().0;
+    let of = |snow: &SnowParams| {
+        [
+            ("rain_snow", format!("{:?}", snow.rain_snow)),
+            ("degree_day_factor_mm_per_c_day.lowest", snow.degree_day_factor_lowest.to_string()),
+            ("degree_day_factor_mm_per_c_day.highest", snow.degree_day_factor_highest.to_string()),
+            ("degree_day_factor_mm_per_c_day.highest_on", format!("{:?}", snow.highest_on)),
+            ("melt_base_c", snow.melt_base_c.to_string()),
+            ("liquid_holding_fraction", snow.liquid_holding_fraction.to_string()),
+            ("refreeze_fraction", snow.refreeze_fraction.to_string()),
+        ]
+    };
+    for choice in 0..64_u32 {
+        let is_on = |bit: u32| choice >> bit & 1 == 1;
+        let mut raw = RawSnow::default();
+        if is_on(0) {
+            radiation(&mut raw, Radiation::FACTOR_MM_PER_C_DAY);
+        }
+        if is_on(1) {
+            cold_content(&mut raw, ColdContent::DAILY_SHARE);
+        }
+        if is_on(2) {
+            patchiness(&mut raw, 0.4);
+        }
+        raw.options.wet_bulb = is_on(3);
+        raw.options.start_bare_each_year = is_on(4);
+        let snow = SnowParams::check(&raw, !is_on(5), false).unwrap().0;
+        for ((key, value), (_, usual)) in of(&snow).into_iter().zip(of(&plain)) {
+            let with = snow.brings_default_of(key);
+            assert_eq!(with.is_some(), value != usual, "{key} = {value} with {raw:?}");
+            let is_on = |option: &str| match option {
+                "[snow.radiation]" => raw.options.radiation.is_some(),
+                "[snow.cold_content]" => raw.options.cold_content.is_some(),
+                "[snow.wet_bulb]" => raw.options.wet_bulb,
+                rule => rule == "degree_rule = \"mean\"" && snow.degree_rule == DegreeRule::Mean,
+            };
+            assert!(with.is_none_or(is_on), "{key} with {with:?}");
+        }
+    }
+}
+
 fn is_about(faults: &[Fault], key: &str) -> bool {
     faults.iter().any(|fault| fault.place == Place::Key(key.to_owned()))
 }

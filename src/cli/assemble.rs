@@ -8,13 +8,14 @@ use crate::baseline::{
     BASELINE_YEARS_KEY, Baseline, BaselineChoice, BaselineYears, Detrended, LEAST_YEARS, detrend,
 };
 use crate::basin::{Basin, GroundStated};
+use crate::defaults::DefaultInForce;
 use crate::ensemble::{BandClimate, WinterMonths, band_climates, snow_that_piles_up};
 use crate::fault::{Fault, Unlikely};
 use crate::fit::{Comparison, Model, Site, compare};
 use crate::observed::Observations;
 use crate::perturb::{MonthlyChange, Recipe};
 use crate::report::{Input, Origin, Reader};
-use crate::scenario::{DefaultInForce, Document, Draft, ObservedTyped, Scenario};
+use crate::scenario::{Document, Draft, ObservedTyped, Scenario};
 use crate::season::Measures;
 use crate::snow::{LaneSpec, Lanes, OpenLedger, StationPhase, correct_catch};
 use crate::units::cubic_hectometres;
@@ -205,6 +206,7 @@ fn note_baseline_years(years: &BaselineYears, defaults: &mut Vec<DefaultInForce>
     let noted = DefaultInForce {
         key: BASELINE_YEARS_KEY.to_owned(),
         value: format!("[{}, {}]", years.first, years.last),
+        with: None,
     };
     defaults.insert(after.map_or(defaults.len(), |at| at + 1), noted);
 }

@@ -74,11 +74,7 @@ fn describe<'a>(
         levels_c: &scenario.warming.levels_c,
         reference: scenario.warming.reference,
         warming: &scenario.warming.warming,
-        defaults: ready
-            .defaults
-            .iter()
-            .map(|default| (default.key.as_str(), default.value.as_str()))
-            .collect(),
+        defaults: &ready.defaults,
         unlikely: &ready.unlikely,
         generator,
     }

@@ -128,7 +128,7 @@ fn describe<'a>(
             detrended: ready.detrended.as_ref(),
         },
         findings,
-        defaults: ready.defaults.iter().map(|default| (default.key.clone(), default.value.clone())).collect(),
+        defaults: &ready.defaults,
         unlikely: &ready.unlikely,
         origin: ready.origin("study", path, shared),
     }

@@ -57,7 +57,7 @@ pub fn briefing_html(
                     h1 { (study.title) }
                     p.notice {
                         "This model is not fitted to observed snow. Its parameters are "
-                        @if study.defaults.iter().any(|(key, _)| key.starts_with("snow.")) { "at least in part the defaults" } @else { "those stated in the scenario" }
+                        @if study.defaults.iter().any(|default| default.key.starts_with("snow.")) { "at least in part the defaults" } @else { "those stated in the scenario" }
                         ", and they decide headlines: "
                         @if findings.comparisons.is_empty() { "hold the record's own years below against snow you know before you rely on any number here." } @else {
                             "read how far it is from " a href=(format!("#{}", observed::ADDRESS)) { "what was observed" } " before you rely on any number here."

@@ -3,6 +3,7 @@
 use super::reader::Reader;
 use crate::baseline::{Baseline, Detrended};
 use crate::basin::{Basin, BeyondStations};
+use crate::defaults::DefaultInForce;
 use crate::ensemble::RecordYear;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
@@ -44,8 +45,8 @@ pub struct Study<'a> {
     pub record: Record<'a>,
     /// What was found.
     pub findings: &'a Findings,
-    /// Defaults in force, `(key, value)`.
-    pub defaults: Vec<(String, String)>,
+    /// Defaults in force.
+    pub defaults: &'a [DefaultInForce],
     /// What is unlikely.
     pub unlikely: &'a [Unlikely],
     /// How the study is repeated, and from what.

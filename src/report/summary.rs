@@ -6,6 +6,7 @@ use super::json::lines;
 use super::study::{Input, Origin, Study};
 use crate::baseline::{Baseline, BaselineYears, Detrended};
 use crate::basin::BeyondStations;
+use crate::defaults::DefaultInForce;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
 use crate::perturb::Warming;
@@ -131,7 +132,7 @@ struct Manifest<'a> {
     seed: u64,
     inputs: &'a [Input],
     parameters: Parameters<'a>,
-    defaults_in_force: Vec<Default<'a>>,
+    defaults_in_force: &'a [DefaultInForce],
     unlikely: Vec<Notice<'a>>,
     left_out: LeftOut<'a>,
     files: Vec<&'a str>,
@@ -166,12 +167,6 @@ struct Realizations {
     mean_run_years: Option<f64>,
     wet_day_mm: f64,
     mean_change_sd_pct: Option<f64>,
-}
-
-#[derive(Serialize)]
-struct Default<'a> {
-    key: &'a str,
-    value: &'a str,
 }
 
 #[derive(Serialize)]
@@ -227,7 +222,7 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
             },
             report_units: study.reader.units,
         },
-        defaults_in_force: study.defaults.iter().map(|(key, value)| Default { key, value }).collect(),
+        defaults_in_force: study.defaults,
         unlikely: unlikely.iter().map(|(about, why)| Notice { about, why }).collect(),
         left_out: LeftOut { counts: study.record.counts, water_years: study.record.skipped },
         files: files.to_vec(),

@@ -32,13 +32,13 @@ pub use basin::BasinTyped;
 pub use document::Document;
 pub use draw::{Drawing, Located, draw, located, unlikely_lines};
 pub use hypsometry::HypsometryTyped;
-pub use notes::DefaultInForce;
 pub use observed::ObservedTyped;
 pub use realizations::RealizationsTyped;
 pub use report::ReportTyped;
 pub use warming::WarmingTyped;
 pub use weather::{RecordSource, WeatherTyped};
 
+use crate::defaults::DefaultInForce;
 use crate::fault::{Fault, Unlikely};
 use crate::season::SeasonSettings;
 use crate::snow::SnowParams;

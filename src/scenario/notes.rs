@@ -4,20 +4,11 @@ use super::{
     BasinTyped, Draft, HypsometryTyped, ObservedTyped, RealizationsTyped, RecordSource, ReportTyped,
     WarmingTyped, WeatherTyped,
 };
+use crate::defaults::DefaultInForce;
 use crate::fault::{Fault, Unlikely};
 use crate::season::SeasonSettings;
 use crate::snow::SnowParams;
-use serde::Serialize;
 use std::cell::RefCell;
-
-/// A default that is in force because nothing was typed.
-#[derive(Debug, Clone, PartialEq, Eq, Serialize)]
-pub struct DefaultInForce {
-    /// The scenario key.
-    pub key: String,
-    /// Its value, as one would type it.
-    pub value: String,
-}
 
 /// Collects what is met while a scenario is read.
 #[derive(Debug, Default)]

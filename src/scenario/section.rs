@@ -2,7 +2,8 @@
 
 use super::document::Document;
 use super::nearest::nearest;
-use super::notes::{DefaultInForce, Notes};
+use super::notes::Notes;
+use crate::defaults::DefaultInForce;
 use crate::fault::{Fault, Place, Unlikely};
 use toml::de::{DeTable, DeValue};
 
@@ -52,10 +53,13 @@ impl<'d> Section<'d> {
 
     /// Notes the default of a key that was not typed.
     pub fn default(&self, key: &str, value: impl std::fmt::Display) {
-        self.notes
-            .defaults
-            .borrow_mut()
-            .push(DefaultInForce { key: self.path_of(key), value: value.to_string() });
+        self.default_with(key, value, None);
+    }
+
+    /// The same of a default that something else in the scenario brings.
+    pub fn default_with(&self, key: &str, value: impl std::fmt::Display, with: Option<&'static str>) {
+        let default = DefaultInForce { key: self.path_of(key), value: value.to_string(), with };
+        self.notes.defaults.borrow_mut().push(default);
     }
 
     /// Notes that a key names a data file.

@@ -130,7 +130,7 @@ fn note_defaults(section: &Section<'_>, raw: &RawSnow, snow: &SnowParams) {
     ];
     for (is_default, key, value) in defaults {
         if is_default {
-            section.default(&key, value);
+            section.default_with(&key, value, snow.brings_default_of(&key));
         }
     }
 }

@@ -30,8 +30,18 @@ pub(super) fn read(section: &mut Section<'_>, is_southern: bool) -> SnowOptions 
         }),
         sublimation: table(section, "sublimation", |table| sublimation(table, is_southern)),
         wet_bulb: table(section, "wet_bulb", |_| Some(())).is_some(),
-        start_bare_each_year: section.flag("start_bare_each_year").unwrap_or(false),
+        start_bare_each_year: starts_bare(section),
     }
+}
+
+fn starts_bare(section: &mut Section<'_>) -> bool {
+    let key = "start_bare_each_year";
+    if !section.has(key) {
+        section.knows(key);
+        section.default(key, false);
+        return false;
+    }
+    section.flag(key).unwrap_or(false)
 }
 
 /// What a table says, if it is there.

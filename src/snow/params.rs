@@ -116,6 +116,22 @@ impl SnowParams {
         snow
     }
 
+    /// What brings a default that is not the usual one, as a scenario would type it: an option, or the mean rule. `key` is a
+    /// key of `[snow]`.
+    pub fn brings_default_of(&self, key: &str) -> Option<&'static str> {
+        let options = &self.options;
+        let (of_factor, of_lowest) = (key.starts_with("degree_day_factor"), !key.ends_with(".highest_on"));
+        let with_radiation = key == "refreeze_fraction" || key == "melt_base_c" || of_factor && of_lowest;
+        match key {
+            "rain_snow" if options.wet_bulb => Some("[snow.wet_bulb]"),
+            "refreeze_fraction" if options.cold_content.is_some() => Some("[snow.cold_content]"),
+            _ if !with_radiation => None,
+            _ if options.radiation.is_some() => Some("[snow.radiation]"),
+            _ if self.degree_rule == DegreeRule::Mean => Some("degree_rule = \"mean\""),
+            _ => None,
+        }
+    }
+
     /// The same at a point, as a snow pillow measures it: without the options that describe an area.
     pub fn at_a_point(self) -> Self {
         Self { options: self.options.at_a_point(), ..self }

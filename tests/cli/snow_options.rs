@@ -46,6 +46,12 @@ fn patchy_snow_uncovers_the_ground_little_by_little() {
     let partly = covered.iter().filter(|share| **share > 0.0 && **share < 1.0).count();
     assert!(partly > 10, "{partly} days partly covered");
     assert!(covered.iter().all(|share| (share * 10.0 - (share * 10.0).round()).abs() < 1e-12), "tenths");
+    for place in ["1", "2", "basin"] {
+        let covered = column(&patchy, place, "covered_share");
+        let full = covered.iter().copied().fold(0.0, f64::max);
+        assert_eq!(full, 1.0, "{place}: full cover is 1 to the bit");
+        assert!(covered.iter().all(|share| *share == 1.0 || *share < 0.99), "{place}");
+    }
     let sum = |basin: &Basin, name: &str| column(basin, "1", name).iter().sum::<f64>();
     let (plain, uneven) = (sum(&Basin::new(), "snow_mm"), sum(&patchy, "snow_mm"));
     assert!((plain - uneven).abs() < 1e-9 * plain, "{plain} and {uneven} mm of snow");
@@ -116,9 +122,19 @@ fn cold_content_is_told() {
     let said = basin.run("check scenario.toml").stdout;
     assert!(
         said.contains("snow.cold_content.daily_share = 0.3")
-            && said.contains("snow.refreeze_fraction = 0.05"),
+            && said.contains("snow.refreeze_fraction = 0.05, with [snow.cold_content]"),
         "{said}"
     );
+    assert!(
+        said.contains("snow.start_bare_each_year = false\n") && said.contains("snow.melt_base_c = 1\n"),
+        "{said}"
+    );
+    let document = basin.run("check scenario.toml --json").stdout;
+    let document: serde_json::Value = serde_json::from_str(&document).unwrap();
+    let defaults = document["defaults_in_force"].as_array().unwrap();
+    let of = |key: &str| defaults.iter().find(|default| default["key"] == key).unwrap();
+    assert_eq!(of("snow.refreeze_fraction")["with"], "[snow.cold_content]");
+    assert!(of("snow.melt_base_c").get("with").is_none());
 }
 
 /// A south slope melts more than a north slope; trees melt less; the factor of each day stands in the daily table.

@@ -54,7 +54,8 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
         }
         h3 { "Defaults in force" }
         @if study.defaults.is_empty() { p { "None: the scenario states everything." } } @else {
-            p { @for (at, (key, value)) in study.defaults.iter().enumerate() { @if at > 0 { ", " } code { (key) " = " (value) } } }
+            p { @for (at, default) in study.defaults.iter().enumerate() { @if at > 0 { ", " } code { (default.key) " = " (default.value) }
+                @if let Some(with) = default.with { " (with " code { (with) } ")" } } }
         }
         @if !study.unlikely.is_empty() {
             h3 id=(SECOND_LOOK) { "Worth a second look" @if reader.units != UnitSystem::Metric { " (in the scenario's metric units)" } }

@@ -5,6 +5,7 @@ use super::Checked;
 use super::observed::SiteDocument;
 use crate::baseline::{Baseline, BaselineYears, Detrended, wilson};
 use crate::basin::{Band, BeyondStations, PrecipitationGradient};
+use crate::defaults::DefaultInForce;
 use crate::ensemble::BandClimate;
 use crate::findings::GeneratorSheet;
 use crate::perturb::Warming;
@@ -48,7 +49,7 @@ struct Document<'a> {
     levels_c: &'a [f64],
     reference_c: f64,
     warming: &'a Warming,
-    defaults_in_force: Vec<DefaultDocument<'a>>,
+    defaults_in_force: &'a [DefaultInForce],
     unlikely: Vec<String>,
     #[serde(skip_serializing_if = "Option::is_none")]
     generator: Option<&'a GeneratorSheet>,
@@ -69,12 +70,6 @@ struct BandDocument<'a> {
     climate: &'a BandClimate,
     snow_fraction: Option<f64>,
     seasonal_years_share_wilson_95: Option<[f64; 2]>,
-}
-
-#[derive(Serialize)]
-struct DefaultDocument<'a> {
-    key: &'a str,
-    value: &'a str,
 }
 
 impl Checked<'_> {
@@ -132,11 +127,7 @@ impl Checked<'_> {
             levels_c: self.levels_c,
             reference_c: self.levels_c[self.reference],
             warming: self.warming,
-            defaults_in_force: self
-                .defaults
-                .iter()
-                .map(|(key, value)| DefaultDocument { key, value })
-                .collect(),
+            defaults_in_force: self.defaults,
             unlikely: self
                 .unlikely
                 .iter()

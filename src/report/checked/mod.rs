@@ -12,6 +12,7 @@ use super::reader::Reader;
 use super::snow_words;
 use crate::baseline::{Baseline, BaselineYears, Detrended, Seasons};
 use crate::basin::{Basin, BeyondStations};
+use crate::defaults::DefaultInForce;
 use crate::ensemble::BandClimate;
 use crate::fault::Unlikely;
 use crate::findings::GeneratorSheet;
@@ -66,8 +67,8 @@ pub struct Checked<'a> {
     pub reference: usize,
     /// Shape and precipitation.
     pub warming: &'a Warming,
-    /// Defaults in force, `(key, value)`.
-    pub defaults: Vec<(&'a str, &'a str)>,
+    /// Defaults in force.
+    pub defaults: &'a [DefaultInForce],
     /// What is unlikely.
     pub unlikely: &'a [Unlikely],
     /// The weather that was made against the record, if that was asked for.
@@ -143,8 +144,8 @@ impl Checked<'_> {
             page.line(&name.to_lowercase(), what);
         }
         page.head(&format!("Defaults in force: {}", self.defaults.len()));
-        for (key, value) in &self.defaults {
-            page.paragraph(&format!("{key} = {value}"));
+        for default in self.defaults {
+            page.paragraph(&default.to_string());
         }
         page.head(&match self.unlikely.len() {
             0 => "Worth a second look: nothing".to_owned(),
