@@ -163,7 +163,13 @@ fn complain_of_overlaps(
         } else if same.is_some() || below.upper_m > band.lower_m && !below.has_edges_of(band) {
             let expected =
                 format!("a lower edge not below the upper edge of the band on line {}", below_row.line);
-            let mend = "let each band start where the one below ends";
+            let mend = match same {
+                None => "let each band start where the one below ends",
+                Some(_) => {
+                    "let each band start where the one below ends; edges may repeat where slope, aspect, canopy or variation \
+                     (slope_deg, aspect_deg, canopy_fraction, accumulation_cv) differ"
+                }
+            };
             tally.push(table.cell_fault(row, lower, &expected, mend));
         }
     }

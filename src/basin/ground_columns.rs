@@ -87,27 +87,30 @@ impl GroundPlaces {
     /// A row's ground; what cannot be is a fault in the tally.
     pub fn read(&self, table: &Table<'_>, row: &Row<'_>, tally: &mut Tally) -> Ground {
         let slope_deg = self.slope.and_then(|at| {
-            let slope_deg = tally.keep(table.required_number(row, at))?;
-            let mend = "a slope is degrees from the horizontal; 45 degrees are 100 percent";
+            let mend = "a slope is degrees from the horizontal, 45 degrees are 100 percent; flat ground is slope 0 with an \
+                        empty aspect";
+            let slope_deg = tally.keep(table.number_or_mend(row, at, mend))?;
             within(table, row, at, slope_deg, SLOPES_DEG, mend, tally)
         });
         let slope_deg = slope_deg.unwrap_or(0.0);
         let aspect_deg = self.aspect_deg(table, row, slope_deg, tally);
-        let canopy =
-            self.canopy.and_then(|(at, unit)| Some((at, tally.keep(table.required_number(row, at))?, unit)));
+        let open = "the share of the band's area that lies under trees; open ground has 0";
+        let canopy = self
+            .canopy
+            .and_then(|(at, unit)| Some((at, tally.keep(table.number_or_mend(row, at, open))?, unit)));
         let canopy_fraction = canopy.and_then(|(at, value, unit)| {
             let mend = match unit {
                 ShareUnit::Fraction if (1.0..=100.0).contains(&value) => {
                     "write a fraction, 0.45 for 45 percent, or call the column canopy_pct"
                 }
-                _ => "the share of the band's area that lies under trees",
+                _ => open,
             };
             within(table, row, at, value, 0.0..=unit.of_all(), mend, tally)
                 .map(|value| unit.to_fraction(value))
         });
         let accumulation_variation = self.accumulation.and_then(|at| {
-            let variation = tally.keep(filled(table, row, at)).flatten()?;
             let mend = "standard deviation over mean of the snow within the band: 0.5 for 50 percent";
+            let variation = tally.keep(filled(table, row, at, mend)).flatten()?;
             within(table, row, at, variation, VARIATIONS, mend, tally)
         });
         Ground {
@@ -120,8 +123,9 @@ impl GroundPlaces {
 
     /// The way that a slope faces; level ground faces nowhere, and its cell may be empty.
     fn aspect_deg(&self, table: &Table<'_>, row: &Row<'_>, slope_deg: f64, tally: &mut Tally) -> f64 {
-        let mend = "degrees clockwise from north, the way that water runs down: 90 faces east, 180 south";
-        let typed = self.aspect.and_then(|at| Some((at, tally.keep(filled(table, row, at))?)));
+        let mend = "degrees clockwise from north, the way that water runs down: 90 faces east, 180 south; flat ground is slope \
+                    0 with an empty aspect";
+        let typed = self.aspect.and_then(|at| Some((at, tally.keep(filled(table, row, at, mend))?)));
         match typed {
             Some((at, Some(aspect_deg))) => {
                 let sound = within(table, row, at, aspect_deg, ASPECTS_DEG, mend, tally);
@@ -143,8 +147,8 @@ impl GroundPlaces {
 }
 
 /// The number in a cell that may be empty.
-fn filled(table: &Table<'_>, row: &Row<'_>, at: usize) -> Result<Option<f64>, Fault> {
-    if row.cell(at).is_empty() { Ok(None) } else { table.required_number(row, at).map(Some) }
+fn filled(table: &Table<'_>, row: &Row<'_>, at: usize, mend: &str) -> Result<Option<f64>, Fault> {
+    if row.cell(at).is_empty() { Ok(None) } else { table.number_or_mend(row, at, mend).map(Some) }
 }
 
 /// A cell's number, if it lies within a range; else a fault in the tally.

@@ -2,6 +2,7 @@
 
 use super::numbers::fixed;
 use super::reader::Reader;
+use crate::calendar::MONTHS;
 use crate::snow::{PhaseRule, SnowParams};
 
 /// How rain is told from snow.
@@ -73,12 +74,7 @@ pub(super) fn options(reader: Reader, snow: &SnowParams) -> Vec<(&'static str, S
         ));
     }
     if let Some(loss) = options.sublimation {
-        let most_mm = loss.mm_per_day.iter().copied().fold(0.0, f64::max);
-        let by_day = if most_mm > 0.0 {
-            format!("up to {} a day by month", reader.amount(most_mm))
-        } else {
-            "nothing by the day".to_owned()
-        };
+        let by_day = by_month(reader, &loss.mm_per_day);
         let share = fixed(100.0 * loss.snowfall_fraction, 0);
         words.push(("Sublimation", format!("the air takes {by_day}, and {share} % of each day's snowfall")));
     }
@@ -89,4 +85,53 @@ pub(super) fn options(reader: Reader, snow: &SnowParams) -> Vec<(&'static str, S
         words.push(("Each year bare", words_of_it));
     }
     words
+}
+
+/// `0.3 mm a day from November to March`; `0.1 mm a day in January, 0.4 mm a day in July`.
+fn by_month(reader: Reader, mm_per_day: &[f64; 12]) -> String {
+    let lossy = |month: usize| mm_per_day[month % 12] > 0.0;
+    let count = (0..12).filter(|month| lossy(*month)).count();
+    let most_mm = mm_per_day.iter().copied().fold(0.0, f64::max);
+    let is_one = (0..12).filter(|month| lossy(*month)).all(|month| mm_per_day[month] == most_mm);
+    let starts: Vec<usize> = (0..12).filter(|month| lossy(*month) && !lossy(month + 11)).collect();
+    let a_day = |mm: f64| format!("{} a day", reader.amount(mm));
+    match starts.as_slice() {
+        _ if count == 0 => "nothing by the day".to_owned(),
+        [] if is_one => format!("{} in every month", a_day(most_mm)),
+        [first] if is_one && count > 1 => {
+            let last = (first + count - 1) % 12;
+            format!("{} from {} to {}", a_day(most_mm), MONTHS[*first], MONTHS[last])
+        }
+        _ => {
+            let months = (0..12).filter(|month| lossy(*month));
+            let said = months.map(|month| format!("{} in {}", a_day(mm_per_day[month]), MONTHS[month]));
+            said.collect::<Vec<_>>().join(", ")
+        }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::calendar::{MonthDay, WaterYearStart};
+    use crate::units::UnitSystem;
+
+    #[test]
+    fn losses_name_their_months() {
+        let starts = WaterYearStart(MonthDay::new(10, 1).unwrap());
+        let said = |losses: &[(usize, f64)]| {
+            let mut months = [0.0; 12];
+            losses.iter().for_each(|(month, mm)| months[*month] = *mm);
+            by_month(Reader { units: UnitSystem::Metric, starts }, &months)
+        };
+        assert_eq!(said(&[]), "nothing by the day");
+        let winter = [10, 11, 0, 1, 2].map(|month| (month, 0.3));
+        assert_eq!(said(&winter), "0.3 mm a day from November to March");
+        assert_eq!(said(&[4, 5, 6, 7, 8].map(|month| (month, 0.5))), "0.5 mm a day from May to September");
+        assert_eq!(said(&[(0, 0.3)]), "0.3 mm a day in January");
+        assert_eq!(said(&[(0, 0.3), (6, 0.3)]), "0.3 mm a day in January, 0.3 mm a day in July");
+        assert_eq!(said(&[(0, 0.1), (1, 0.4)]), "0.1 mm a day in January, 0.4 mm a day in February");
+        let every: Vec<(usize, f64)> = (0..12).map(|month| (month, 1.0)).collect();
+        assert_eq!(said(&every), "1.0 mm a day in every month");
+    }
 }

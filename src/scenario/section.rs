@@ -203,18 +203,40 @@ impl<'d> Section<'d> {
 
     /// Faults every key that was not asked for, naming the nearest that was.
     pub fn finish(self) {
+        self.finish_knowing(|_| None);
+    }
+
+    /// The same of a table inside `around`, all of whose keys have been asked for: a key that belongs there was typed below
+    /// the line that opens this table.
+    pub fn finish_inside(self, around: &Self) {
+        let (line, path) = (around.path.clone(), self.path.clone());
+        self.finish_knowing(|key| {
+            around.known.contains(&key).then(|| {
+                let expected = format!("'{key}' in [{line}]");
+                (expected, format!("write it above the line [{path}], among the keys of [{line}]"))
+            })
+        });
+    }
+
+    /// Faults every key that was not asked for; `belongs` says what is expected and how to mend it where a key belongs
+    /// elsewhere.
+    fn finish_knowing(self, belongs: impl Fn(&str) -> Option<(String, String)>) {
         for key in self.table.into_iter().flat_map(|table| table.keys()) {
             let key = key.get_ref().as_ref();
             if self.known.contains(&key) {
                 continue;
             }
-            let (expected, mend) = match nearest(key, self.known.iter().copied()) {
-                Some(word) => (format!("'{word}'?"), format!("write '{word}', or take the key out")),
-                None => (
-                    format!("one of: {}", self.known.join(", ")),
-                    "take it out, or check its table".to_owned(),
-                ),
+            let near = || {
+                let word = nearest(key, self.known.iter().copied())?;
+                Some((format!("'{word}'?"), format!("write '{word}', or take the key out")))
             };
+            let (expected, mend) = belongs(key).or_else(near).unwrap_or_else(|| {
+                let expected = match self.known.as_slice() {
+                    [] => format!("no key: [{}] has none", self.path),
+                    known => format!("one of: {}", known.join(", ")),
+                };
+                (expected, "take it out, or check its table".to_owned())
+            });
             self.fault(Fault {
                 place: Place::Span(self.document.key_span(&self.path_of(key))),
                 found: format!("'{}', which is not a key of a scenario", self.path_of(key)),

@@ -13,10 +13,10 @@ enum PhaseWord {
 }
 
 pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern: bool) -> Option<SnowParams> {
+    let is_wet_bulb = section.is_table("wet_bulb");
+    let rain_snow = read_phase(section.section("rain_snow"), is_wet_bulb);
     let degree_rule =
         section.choice("degree_rule", &[("diurnal", DegreeRule::Diurnal), ("mean", DegreeRule::Mean)]);
-    let options = snow_options::read(&mut section, is_southern);
-    let rain_snow = read_phase(section.section("rain_snow"), options.wet_bulb);
     let mut factor = section.section("degree_day_factor_mm_per_c_day");
     let raw = RawSnow {
         rain_snow,
@@ -27,7 +27,7 @@ pub(super) fn read(mut section: Section<'_>, has_daily_range: bool, is_southern:
         melt_base_c: section.number("melt_base_c"),
         liquid_holding_fraction: section.number("liquid_holding_fraction"),
         refreeze_fraction: section.number("refreeze_fraction"),
-        options,
+        options: snow_options::read(&mut section, is_southern),
     };
     factor.finish();
     let checked = SnowParams::check(&raw, has_daily_range, is_southern);

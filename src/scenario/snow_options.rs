@@ -10,7 +10,9 @@ const WINTER: [[usize; 5]; 2] = [[10, 11, 0, 1, 2], [4, 5, 6, 7, 8]];
 /// Numbers whose range the options themselves check.
 const ANY: std::ops::RangeInclusive<f64> = f64::MIN..=f64::MAX;
 
+/// Reads the options, after all other keys of `[snow]`, so that one that stands below an option's line is known for what it is.
 pub(super) fn read(section: &mut Section<'_>, is_southern: bool) -> SnowOptions {
+    let start_bare_each_year = starts_bare(section);
     SnowOptions {
         radiation: table(section, "radiation", |table| {
             let default = Radiation::FACTOR_MM_PER_C_DAY;
@@ -30,7 +32,7 @@ pub(super) fn read(section: &mut Section<'_>, is_southern: bool) -> SnowOptions 
         }),
         sublimation: table(section, "sublimation", |table| sublimation(table, is_southern)),
         wet_bulb: table(section, "wet_bulb", |_| Some(())).is_some(),
-        start_bare_each_year: starts_bare(section),
+        start_bare_each_year,
     }
 }
 
@@ -53,7 +55,7 @@ fn table<T>(
     let is_there = section.is_table(key);
     let mut table = section.section(key);
     let read = if is_there { read(&mut table) } else { None };
-    table.finish();
+    table.finish_inside(section);
     read
 }
 

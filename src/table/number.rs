@@ -26,10 +26,17 @@ impl Table<'_> {
     /// # Errors
     /// A cell that does not.
     pub fn required_number(&self, row: &Row<'_>, column: usize) -> Result<f64, Fault> {
+        self.number_or_mend(row, column, "fill it in, or take the line out")
+    }
+
+    /// The same where there is more to say than to fill it in.
+    ///
+    /// # Errors
+    /// A cell that holds none, with that mend unless its signs say more.
+    pub fn number_or_mend(&self, row: &Row<'_>, column: usize, mend: &str) -> Result<f64, Fault> {
         let cell = row.cell(column);
         self.format.number(cell).ok_or_else(|| {
-            let mend =
-                self.mend_of_sign(cell).unwrap_or_else(|| "fill it in, or take the line out".to_owned());
+            let mend = self.mend_of_sign(cell).unwrap_or_else(|| mend.to_owned());
             self.cell_fault(row, column, "a number", &mend)
         })
     }

@@ -20,6 +20,7 @@ fn bands_that_are_none() {
             ("NaN", table("1900,NaN,40\n2200,2500,25\n")),
             ("an empty cell", table("1900,2200,\n2200,2500,25\n")),
             ("overlap", table("1900,2300,40\n2200,2500,25\n")),
+            ("the same edges twice", table("1900,2200,40\n1900,2200,25\n")),
             ("upside down", table("2200,1900,40\n2200,2500,25\n")),
             ("feet beside metres", "lower_m,lower_ft,upper_m,area_km2\n1900,6234,2200,40\n".to_owned()),
             ("a mean outside", "lower_m,upper_m,area_km2,mean_m\n1900,2200,40,1800\n".to_owned()),

@@ -21,6 +21,8 @@ fn ground_that_is_none() {
                 "aspects by name and beyond the circle",
                 table("1900,2200,40,25,S,0,\n2200,2500,25,20,361,0,\n"),
             ),
+            ("an empty slope", table("1900,2200,40,,,0,\n2200,2500,25,0,,0,\n")),
+            ("flat ground by other signs", table("1900,2200,40,0,N,0,\n2200,2500,25,0,-1,0,\n")),
             ("canopy in percent", table("1900,2200,40,25,180,45,\n2200,2500,25,20,0,-0.1,\n")),
             ("a canopy that is not there", table("1900,2200,40,25,180,,\n2200,2500,25,20,0,0,\n")),
             ("an accumulation in percent", table("1900,2200,40,25,180,0,50\n2200,2500,25,20,0,0,\n")),

@@ -22,6 +22,8 @@ fn keys_that_are_not_known() {
         ("[warming]", "[warning]"),
         ("count = 6", "count = 6\nflavour = \"plain\""),
         ("unit = \"mm\"", "units = \"mm\""),
+        ("[warming]", "[snow.wet_bulb]\nmelt_base_c = 1\npressure = 80\n\n[warming]"),
+        ("[warming]", "[snow.cold_content]\ndaily_shares = 0.3\nstart_bare_each_year = true\n\n[warming]"),
     ]);
     insta::assert_snapshot!(said, @r#"
 error: scenario.toml: no 'title'
