@@ -27,6 +27,47 @@ fn check(set: fn(&mut RawSnow, f64), value: f64) -> Result<Vec<Unlikely>, Vec<Fa
     SnowParams::check(&raw, true, false).map(|(_, unlikely)| unlikely)
 }
 
+/// The commented demo scenario says of every option and of the mean rule which defaults it changes, with the numbers in force.
+#[test]
+fn the_demo_scenario_says_what_each_option_changes() {
+    let path = std::path::Path::new(env!("CARGO_MANIFEST_DIR")).join("scenarios/alder-fork.toml");
+    let lines = std::fs::read_to_string(path).unwrap();
+    let text: Vec<&str> = lines.split_whitespace().filter(|word| *word != "#").collect();
+    let text = text.join(" ");
+    let of = |set: fn(&mut RawSnow), has_daily_range: bool| {
+        let mut raw = RawSnow::default();
+        set(&mut raw);
+        SnowParams::check(&raw, has_daily_range, false).unwrap().0
+    };
+    let mean = of(|_| (), false);
+    let sunny = |raw: &mut RawSnow| radiation(raw, Radiation::FACTOR_MM_PER_C_DAY);
+    let (sun, sun_by_mean) = (of(sunny, true), of(sunny, false));
+    let cold = of(|raw| cold_content(raw, ColdContent::DAILY_SHARE), true);
+    let PhaseRule::Linear { snow_only_below_c, rain_only_above_c } =
+        of(|raw| raw.options.wet_bulb = true, true).rain_snow
+    else {
+        panic!("the wet bulb's rule is linear");
+    };
+    for said in [
+        format!(
+            "factors {:.2} to {:.1}, melt_base_c {:.1}, refreeze_fraction {:.2}",
+            mean.degree_day_factor_lowest,
+            mean.degree_day_factor_highest,
+            mean.melt_base_c,
+            mean.refreeze_fraction
+        ),
+        format!(
+            "lowest and highest {:.2} (if stated, they must be the same); melt_base_c {:.1}, by the daily mean {:.1}; \
+             refreeze_fraction {:.2}",
+            sun.degree_day_factor_lowest, sun.melt_base_c, sun_by_mean.melt_base_c, sun.refreeze_fraction
+        ),
+        format!("changes: refreeze_fraction {:.2}, also beside radiation", cold.refreeze_fraction),
+        format!("snow_only_below_c = {snow_only_below_c}, rain_only_above_c = {rain_only_above_c} }}"),
+    ] {
+        assert!(text.contains(&said), "'{said}' is not in {text}");
+    }
+}
+
 /// What brings a default is named where, and only where, the default is not that of the plain model with daily minima and
 /// maxima, for every choice of options and both rules.
 #[test]
