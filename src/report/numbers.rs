@@ -43,6 +43,15 @@ pub fn trimmed(number: &str) -> &str {
     if number.contains('.') { number.trim_end_matches('0').trim_end_matches('.') } else { number }
 }
 
+/// A stated number in as few decimals as come within a hundredth of it: `30`, `0.3`, `0.0039`; `0` of nothing.
+pub fn stated(value: f64) -> String {
+    let near = |decimals: &usize| {
+        let power = [1.0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6][*decimals];
+        ((value * power).round() / power - value).abs() <= 0.01 * value.abs()
+    };
+    trimmed(&fixed(value, (0..6).find(near).unwrap_or(6))).to_owned()
+}
+
 /// `14 May`: the date of a day of the water year in a year of 365 days, to the nearest whole day.
 pub fn date(day: f64, starts: WaterYearStart) -> String {
     #[cfg(test)]

@@ -1,6 +1,6 @@
 //! The snow model's rules and options in words.
 
-use super::numbers::fixed;
+use super::numbers::stated;
 use super::reader::Reader;
 use crate::calendar::MONTHS;
 use crate::snow::{PhaseRule, SnowParams};
@@ -69,13 +69,13 @@ pub(super) fn options(reader: Reader, snow: &SnowParams) -> Vec<(&'static str, S
                 "a cold pack freezes what melts in it until it is at {}; its temperature closes {} % of its difference to the \
                  air each day",
                 reader.temperature(0.0),
-                fixed(100.0 * cold.daily_share, 0)
+                stated(100.0 * cold.daily_share)
             ),
         ));
     }
     if let Some(loss) = options.sublimation {
         let by_day = by_month(reader, &loss.mm_per_day);
-        let share = fixed(100.0 * loss.snowfall_fraction, 0);
+        let share = stated(100.0 * loss.snowfall_fraction);
         words.push(("Sublimation", format!("the air takes {by_day}, and {share} % of each day's snowfall")));
     }
     if options.start_bare_each_year {
@@ -94,7 +94,8 @@ fn by_month(reader: Reader, mm_per_day: &[f64; 12]) -> String {
     let most_mm = mm_per_day.iter().copied().fold(0.0, f64::max);
     let is_one = (0..12).filter(|month| lossy(*month)).all(|month| mm_per_day[month] == most_mm);
     let starts: Vec<usize> = (0..12).filter(|month| lossy(*month) && !lossy(month + 11)).collect();
-    let a_day = |mm: f64| format!("{} a day", reader.amount(mm));
+    let depth = reader.units.depth();
+    let a_day = |mm: f64| format!("{} {} a day", stated(depth.of(mm)), depth.word);
     match starts.as_slice() {
         _ if count == 0 => "nothing by the day".to_owned(),
         [] if is_one => format!("{} in every month", a_day(most_mm)),
@@ -129,9 +130,10 @@ mod tests {
         assert_eq!(said(&winter), "0.3 mm a day from November to March");
         assert_eq!(said(&[4, 5, 6, 7, 8].map(|month| (month, 0.5))), "0.5 mm a day from May to September");
         assert_eq!(said(&[(0, 0.3)]), "0.3 mm a day in January");
+        assert_eq!(said(&[(0, 0.04)]), "0.04 mm a day in January", "a small number is not 0");
         assert_eq!(said(&[(0, 0.3), (6, 0.3)]), "0.3 mm a day in January, 0.3 mm a day in July");
         assert_eq!(said(&[(0, 0.1), (1, 0.4)]), "0.1 mm a day in January, 0.4 mm a day in February");
         let every: Vec<(usize, f64)> = (0..12).map(|month| (month, 1.0)).collect();
-        assert_eq!(said(&every), "1.0 mm a day in every month");
+        assert_eq!(said(&every), "1 mm a day in every month");
     }
 }

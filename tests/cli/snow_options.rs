@@ -130,7 +130,7 @@ fn cold_content_is_told() {
         "{said}"
     );
     let document = basin.run("check scenario.toml --json").stdout;
-    let document: serde_json::Value = serde_json::from_str(&document).unwrap();
+    let document: Value = serde_json::from_str(&document).unwrap();
     let defaults = document["defaults_in_force"].as_array().unwrap();
     let of = |key: &str| defaults.iter().find(|default| default["key"] == key).unwrap();
     assert_eq!(of("snow.refreeze_fraction")["with"], "[snow.cold_content]");

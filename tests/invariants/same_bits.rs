@@ -5,7 +5,7 @@ use super::scenario::{Scenario, scenarios};
 use super::with_options::scenarios_with_options;
 use proptest::prelude::*;
 use thawline::perturb::MonthlyChange;
-use thawline::snow::{Engine, Patchiness, Path, Radiation, Sublimation, YearBlock};
+use thawline::snow::{ColdContent, Engine, Patchiness, Path, Radiation, SnowOptions, Sublimation, YearBlock};
 
 /// The bits of everything in a year that is in use.
 fn bits(block: &YearBlock) -> Vec<u64> {
@@ -94,6 +94,38 @@ proptest! {
             let block = engine.year(series.view(year)).expect("the ledger is closed");
             expected.detail = None;
             prop_assert!(bits(block) == bits(&expected));
+        }
+    }
+
+    /// The same with each option alone: the plain form of a year is run only where there is none of them.
+    #[test]
+    fn detail_does_not_show_beside_one_option(scenario in scenarios()) {
+        let none = SnowOptions::default();
+        let radiation = Some(Radiation { factor_mm_per_c_day: 3.0 });
+        let patchiness = Some(Patchiness { coefficient_of_variation: 0.6, classes: 3 });
+        let cold_content = Some(ColdContent { daily_share: 0.4 });
+        let sublimation = Some(Sublimation { mm_per_day: [0.4; 12], snowfall_fraction: 0.1 });
+        for options in [
+            SnowOptions { radiation, ..none },
+            SnowOptions { patchiness, ..none },
+            SnowOptions { cold_content, ..none },
+            SnowOptions { sublimation, ..none },
+            SnowOptions { wet_bulb: true, ..none },
+        ] {
+            let mut scenario = scenario.clone();
+            scenario.snow.options = options;
+            let series = scenario.climate.series();
+            let lanes = scenario.lanes(&scenario.changes());
+            let with = Scenario::run(&lanes, &series, Path::Widest);
+            let mut engine = Engine::new(&lanes, false).with_cover();
+            for (year, mut expected) in series.years.iter().zip(with) {
+                if !year.follows {
+                    engine.restart();
+                }
+                let block = engine.year(series.view(year)).expect("the ledger is closed");
+                expected.detail = None;
+                prop_assert!(bits(block) == bits(&expected), "{options:?}");
+            }
         }
     }
 

@@ -102,7 +102,7 @@ fn observed(days: &PlaceDays, units: UnitSystem) -> String {
             )
         }
         (Place::Band { band, .. }, Some(ObservedAt { site, elevation_m, kind })) => format!(
-            "The model at the band's {}; observed at {site} ({}, {}), which lies within the band.{}",
+            "The model at the band's {}; observed at {site} ({}, {}), which lies within the band's elevations.{}",
             height(band.elevation_m, units),
             kind.words(),
             height(*elevation_m, units),
