@@ -175,7 +175,7 @@ fn observed_snow_is_named_or_missed() {
     assert!(
         with_site
             .caption
-            .contains("observed at Heron Meadow (snow course, 1\u{2009}950 m), which lies within the band."),
+            .contains("observed at Heron Meadow (snow course, 1\u{2009}950 m), which lies within the band's elevations."),
         "{}",
         with_site.caption
     );
