@@ -5,7 +5,7 @@ use super::scenario::{Scenario, naive_days, scenarios};
 use super::with_options::scenarios_with_options;
 use crate::naive;
 use proptest::prelude::*;
-use thawline::snow::{Lanes, Path, YearBlock};
+use thawline::snow::{LaneConst, LaneDay, Lanes, Pack, Path, YearBlock, step};
 use thawline::weather::Series;
 
 /// Two ways of adding the same numbers may part by rounding: 1e-9 mm is what the method promises, about a million
@@ -148,4 +148,34 @@ fn check_basin(
         assert_same(end, naive::basin_mean(&at_end, areas), "basin SWE as the year ends", year.days)?;
     }
     Ok(())
+}
+
+/// By hand: 10 mm of ice hold 10 mm of liquid. A day at 2 degC brings 5 mm of rain and no degrees above the melt base: the rain
+/// melts 0.0125*5*2 = 0.125 mm, and of 15.125 mm of liquid 9.875 mm of ice hold 9.875. The pack is no bare ground, though ice and
+/// liquid are alike to the bit.
+#[test]
+fn as_much_liquid_as_ice_is_a_pack() {
+    let pack = Pack { ice_mm: 10.0, liquid_mm: 10.0, cold_mm: 0.0 };
+    let day = LaneDay {
+        snow_mm: 0.0,
+        rain_mm: 5.0,
+        mean_c: 2.0,
+        melt_degrees_c: 0.0,
+        freeze_degrees_c: 0.0,
+        melt_factor: 3.0,
+        degree_day_factor: 3.0,
+        sublimation_mm: 0.0,
+    };
+    let lane =
+        LaneConst { holding_fraction: 1.0, refreeze_fraction: 0.0, cold_per_mm_c: 0.0, cold_share: 0.0 };
+    let (after, fluxes) = step::<false>(pack, day, lane);
+    for (found, expected) in [
+        (fluxes.bare_ground_rain_mm, 0.0),
+        (fluxes.melt_mm, 0.125),
+        (fluxes.outflow_mm, 5.25),
+        (after.ice_mm, 9.875),
+        (after.liquid_mm, 9.875),
+    ] {
+        assert!((found - expected).abs() < 1e-12, "{found} for {expected}; only rounding may part them");
+    }
 }
