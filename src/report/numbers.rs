@@ -6,11 +6,14 @@ use chrono::Datelike;
 /// The word for a number that is not there.
 pub const DASH: &str = "–";
 
-/// A number with so many decimals (at most three), halves rounded away from zero, a true minus, no minus before zero, and thousands set apart by a thin space.
+/// 10 to the power of each number of decimals.
+const POWERS_OF_TEN: [f64; 7] = [1.0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6];
+
+/// A number with so many decimals (at most six), halves rounded away from zero, a true minus, no minus before zero, and thousands set apart by a thin space.
 pub fn fixed(value: f64, decimals: usize) -> String {
     #[cfg(test)]
     said::note(value);
-    let scale = [1.0, 10.0, 100.0, 1000.0].get(decimals).copied().unwrap_or(1.0);
+    let scale = POWERS_OF_TEN.get(decimals).copied().unwrap_or(1.0);
     let text = format!("{:.decimals$}", (value.abs() * scale).round() / scale);
     let is_zero = text.bytes().all(|byte| byte == b'0' || byte == b'.');
     let (whole, fraction) = text.split_at(text.find('.').unwrap_or(text.len()));
@@ -46,7 +49,7 @@ pub fn trimmed(number: &str) -> &str {
 /// A stated number in as few decimals as come within a hundredth of it: `30`, `0.3`, `0.0039`; `0` of nothing.
 pub fn stated(value: f64) -> String {
     let near = |decimals: &usize| {
-        let power = [1.0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6][*decimals];
+        let power = POWERS_OF_TEN[*decimals];
         ((value * power).round() / power - value).abs() <= 0.01 * value.abs()
     };
     trimmed(&fixed(value, (0..6).find(near).unwrap_or(6))).to_owned()
@@ -102,6 +105,13 @@ pub mod said {
 mod tests {
     use super::*;
     use crate::calendar::MonthDay;
+
+    /// By hand: 0.1 mm are 0.003937 in, 0.0039 within a hundredth of it; 0.5 mm are 0.01969 in.
+    #[test]
+    fn stated_numbers_have_the_decimals_that_they_need() {
+        let said = [30.0, 0.3, 0.0, 0.1 / 25.4, 0.5 / 25.4, 12.5, 2e-6].map(stated);
+        assert_eq!(said, ["30", "0.3", "0", "0.0039", "0.0197", "12.5", "0.000002"]);
+    }
 
     #[test]
     fn numbers_read_well() {
