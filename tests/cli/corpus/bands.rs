@@ -78,6 +78,15 @@ error: lower_m: '2200'
   |
   = help: let each band start where the one below ends
 
+## the same edges twice
+error: lower_m: '1900'
+ --> bands.csv:3:1
+  |
+3 | 1900,2200,25
+  | ^^^^ expected a lower edge not below the upper edge of the band on line 2
+  |
+  = help: let each band start where the one below ends; edges may repeat where slope, aspect, canopy or variation (slope_deg, aspect_deg, canopy_fraction, accumulation_cv) differ
+
 ## upside down
 error: upper_m: '1900'
  --> bands.csv:2:6

@@ -40,7 +40,7 @@ error: aspect_deg: ''
 2 | 1900,2200,40,25,,0,
   |                 ^ expected the way that the slope faces
   |
-  = help: degrees clockwise from north, the way that water runs down: 90 faces east, 180 south
+  = help: degrees clockwise from north, the way that water runs down: 90 faces east, 180 south; flat ground is slope 0 with an empty aspect
 
 ## slopes without aspects
 error: slope_deg: '25'
@@ -72,7 +72,7 @@ error: slope_deg: '110'
 2 | 1900,2200,40,110,180,0,
   |              ^^^ expected a number from 0 to 90
   |
-  = help: a slope is degrees from the horizontal; 45 degrees are 100 percent
+  = help: a slope is degrees from the horizontal, 45 degrees are 100 percent; flat ground is slope 0 with an empty aspect
 
 error: slope_deg: '-5'
  --> bands.csv:3:14
@@ -80,7 +80,7 @@ error: slope_deg: '-5'
 3 | 2200,2500,25,-5,0,0,
   |              ^^ expected a number from 0 to 90
   |
-  = help: a slope is degrees from the horizontal; 45 degrees are 100 percent
+  = help: a slope is degrees from the horizontal, 45 degrees are 100 percent; flat ground is slope 0 with an empty aspect
 
 2 faults; nothing was run
 
@@ -91,7 +91,7 @@ error: aspect_deg: 'S'
 2 | 1900,2200,40,25,S,0,
   |                 ^ expected a number
   |
-  = help: fill it in, or take the line out
+  = help: degrees clockwise from north, the way that water runs down: 90 faces east, 180 south; flat ground is slope 0 with an empty aspect
 
 error: aspect_deg: '361'
  --> bands.csv:3:17
@@ -99,7 +99,35 @@ error: aspect_deg: '361'
 3 | 2200,2500,25,20,361,0,
   |                 ^^^ expected a number from 0 to 360
   |
-  = help: degrees clockwise from north, the way that water runs down: 90 faces east, 180 south
+  = help: degrees clockwise from north, the way that water runs down: 90 faces east, 180 south; flat ground is slope 0 with an empty aspect
+
+2 faults; nothing was run
+
+## an empty slope
+error: slope_deg: ''
+ --> bands.csv:2:14
+  |
+2 | 1900,2200,40,,,0,
+  |              ^ expected a number
+  |
+  = help: a slope is degrees from the horizontal, 45 degrees are 100 percent; flat ground is slope 0 with an empty aspect
+
+## flat ground by other signs
+error: aspect_deg: 'N'
+ --> bands.csv:2:16
+  |
+2 | 1900,2200,40,0,N,0,
+  |                ^ expected a number
+  |
+  = help: degrees clockwise from north, the way that water runs down: 90 faces east, 180 south; flat ground is slope 0 with an empty aspect
+
+error: aspect_deg: '-1'
+ --> bands.csv:3:16
+  |
+3 | 2200,2500,25,0,-1,0,
+  |                ^^ expected a number from 0 to 360
+  |
+  = help: degrees clockwise from north, the way that water runs down: 90 faces east, 180 south; flat ground is slope 0 with an empty aspect
 
 2 faults; nothing was run
 
@@ -118,7 +146,7 @@ error: canopy_fraction: '-0.1'
 3 | 2200,2500,25,20,0,-0.1,
   |                   ^^^^ expected a number from 0 to 1
   |
-  = help: the share of the band's area that lies under trees
+  = help: the share of the band's area that lies under trees; open ground has 0
 
 2 faults; nothing was run
 
@@ -129,7 +157,7 @@ error: canopy_fraction: ''
 2 | 1900,2200,40,25,180,,
   |                     ^ expected a number
   |
-  = help: fill it in, or take the line out
+  = help: the share of the band's area that lies under trees; open ground has 0
 
 ## an accumulation in percent
 error: accumulation_cv: '50'

@@ -100,6 +100,42 @@ error: 'weather.precipitation.units', which is not a key of a scenario
    = help: write 'unit', or take the key out
 
 2 faults; nothing was run
+
+error: 'snow.wet_bulb.melt_base_c', which is not a key of a scenario
+  --> scenario.toml:18:1
+   |
+18 | melt_base_c = 1
+   | ^^^^^^^^^^^ expected 'melt_base_c' in [snow]
+   |
+   = help: write it above the line [snow.wet_bulb], among the keys of [snow]
+
+error: 'snow.wet_bulb.pressure', which is not a key of a scenario
+  --> scenario.toml:19:1
+   |
+19 | pressure = 80
+   | ^^^^^^^^ expected no key: [snow.wet_bulb] has none
+   |
+   = help: take it out, or check its table
+
+2 faults; nothing was run
+
+error: 'snow.cold_content.daily_shares', which is not a key of a scenario
+  --> scenario.toml:18:1
+   |
+18 | daily_shares = 0.3
+   | ^^^^^^^^^^^^ expected 'daily_share'?
+   |
+   = help: write 'daily_share', or take the key out
+
+error: 'snow.cold_content.start_bare_each_year', which is not a key of a scenario
+  --> scenario.toml:19:1
+   |
+19 | start_bare_each_year = true
+   | ^^^^^^^^^^^^^^^^^^^^ expected 'start_bare_each_year' in [snow]
+   |
+   = help: write it above the line [snow.cold_content], among the keys of [snow]
+
+2 faults; nothing was run
 "#);
 }
 
