@@ -59,7 +59,7 @@ fn the_form_of_the_gradient_decides_about_the_basin() {
         let form = if words == "compounded" { "compound" } else { "linear" };
         assert_eq!(run["parameters"]["precipitation_gradient"]["form"], form);
         let page = basin.read("out/briefing.html");
-        assert!(page.contains(&format!("precipitation changes with elevation by +3 % per 100 m, {words};")));
+        assert!(page.contains(&format!(", precipitation by +3 % per 100 m, {words};")));
     }
 }
 
@@ -96,9 +96,9 @@ fn a_warming_that_changes_with_elevation_is_said() {
     let second_look = "warming.level_change_pct_per_1000m: outside -30 to 30 percent per 1000 m; evidence for warming that \
                        changes with elevation is mixed";
     assert!(checked(&much).contains(second_look), "{}", checked(&much));
-    // By hand: bands about 2050 and 4050 m have their mean at 2819.2 m; 1 + 1.5*(-0.7692) = -0.154 in the lower.
-    let tall = with("", "level_change_pct_per_1000m = 150");
-    tall.write("bands.csv", "lower_m,upper_m,area_km2\n1900,2200,40\n3900,4200,25\n");
+    // By hand: bands about 2050 and 5050 m have their mean at 3203.8 m; 1 + 1*(-1.1538) = -0.154 in the lower.
+    let tall = with("", "level_change_pct_per_1000m = 100");
+    tall.write("bands.csv", "lower_m,upper_m,area_km2\n1900,2200,40\n4900,5200,25\n");
     let second_look = "warming.level_change_pct_per_1000m: warms one of the bands by -0.15 times the level";
     assert!(checked(&tall).contains(second_look), "{}", checked(&tall));
 }

@@ -64,6 +64,7 @@ second look: weather.tmax: 299 values beyond -55 to 45 degC; the first on 2001-0
 second look: weather.tmin.unit: the column's mean is -18.9 degC, -12.9 degC in its warmest month; read as degC it would be -2.1 degC
 second look: weather.tmax.unit: the column's mean is -13.3 degC, -7.3 degC in its warmest month; read as degC it would be 8.0 degC
 second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: snow.start_bare_each_year: in most of the record's years the snow never goes from 2 bands with 100 % of the basin's area; it is carried into the next year and piles up, and the model makes no ice of it: with snow.start_bare_each_year = true it is taken away as each year ends
 ");
     let inches = precipitation(|_, amount| format!("{:.2}", amount / 25.4));
     insta::assert_snapshot!(accepted(&inches), @r"
@@ -75,6 +76,7 @@ second look: weather.file: only 3 water years are in use: the spread of realizat
     insta::assert_snapshot!(accepted(&millimetres), @r"
 second look: weather.precipitation.unit: 20868 mm a year; read as mm it would be 822 mm
 second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
+second look: snow.start_bare_each_year: in most of the record's years the snow never goes from 2 bands with 100 % of the basin's area; it is carried into the next year and piles up, and the model makes no ice of it: with snow.start_bare_each_year = true it is taken away as each year ends
 ");
 }
 
@@ -85,6 +87,7 @@ second look: weather.precipitation.gauge: the column rises on 273 days and falls
 second look: weather.file: only 2 water years are in use: the spread of realizations hardly holds what chance can do
 second look: weather.precipitation: 155 amounts above 2000 mm in a day, which no station has measured, taken as missing; the first on 2003-04-29 (line 942): 2007.0 mm
 second look: weather.precipitation: 608 amounts above 500 mm in a day; the first on 2001-08-29 (line 334): 504.0 mm
+second look: snow.start_bare_each_year: in most of the record's years the snow never goes from 2 bands with 100 % of the basin's area; it is carried into the next year and piles up, and the model makes no ice of it: with snow.start_bare_each_year = true it is taken away as each year ends
 "#);
     let daily = small();
     daily.exchange("unit = \"mm\"", "unit = \"mm\", gauge = \"accumulating\", reading = \"end-of-day\"");
@@ -103,6 +106,7 @@ fn a_hemisphere_that_is_not_the_stations() {
     insta::assert_snapshot!(accepted(&basin), @r"
 second look: weather.file: only 2 water years are in use: the spread of realizations hardly holds what chance can do
 second look: basin.latitude_deg: January is the coldest month: is the sign of the latitude right?
+second look: snow.start_bare_each_year: in most of the record's years the snow never goes from 2 bands with 100 % of the basin's area; it is carried into the next year and piles up, and the model makes no ice of it: with snow.start_bare_each_year = true it is taken away as each year ends
 ");
 }
 

@@ -125,6 +125,7 @@ second look: weather.precipitation: 1 amount above 2000 mm in a day, which no st
 second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
 second look: weather.tmin: 1095 values, all of them the same; the first on 2000-10-01 (line 2): -3.0 degC. Is it the right column?
 second look: weather.tmax: 1095 values, all of them the same; the first on 2000-10-01 (line 2): 3.0 degC. Is it the right column?
+second look: snow.start_bare_each_year: in most of the record's years the snow never goes from 2 bands with 100 % of the basin's area; it is carried into the next year and piles up, and the model makes no ice of it: with snow.start_bare_each_year = true it is taken away as each year ends
 
 ## no precipitation at all
 second look: weather.file: only 3 water years are in use: the spread of realizations hardly holds what chance can do
