@@ -173,9 +173,9 @@ fn observed_snow_is_named_or_missed() {
     assert!(band.draw().caption.contains("No site with observed snow lies within the band's elevations"));
     let with_site = Made { kind: Some(Kind::Course), ..band }.draw();
     assert!(
-        with_site
-            .caption
-            .contains("observed at Heron Meadow (snow course, 1\u{2009}950 m), which lies within the band's elevations."),
+        with_site.caption.contains(
+            "observed at Heron Meadow (snow course, 1\u{2009}950 m), which lies within the band's elevations."
+        ),
         "{}",
         with_site.caption
     );
