@@ -17,6 +17,12 @@ impl TemperatureGradient {
     pub fn constant(c_per_km: f64) -> Self {
         Self { tmin_c_per_km: [c_per_km; 12], tmax_c_per_km: [c_per_km; 12] }
     }
+
+    /// Whether it is one number.
+    pub fn is_constant(&self) -> bool {
+        let first = self.tmin_c_per_km[0];
+        self.tmin_c_per_km.iter().chain(&self.tmax_c_per_km).all(|c_per_km| *c_per_km == first)
+    }
 }
 
 /// What the next 100 m add to precipitation.

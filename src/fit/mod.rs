@@ -4,13 +4,23 @@
 //! one water year of both, `comparison` puts a site's years together. `place` takes any place day by day.
 
 mod comparison;
+mod held_against;
+mod objective;
+mod parameter;
 mod place;
 mod scores;
+mod search;
 mod site;
+mod sums;
+mod trials;
 mod year;
 
 pub use comparison::{Bias, Comparison, DateError, SurveyBias};
+pub use objective::Objective;
+pub use parameter::{PARAMETERS, Parameter, Parameters};
 pub use place::{ObservedAt, Place, PlaceDays, PlaceYear, place_years};
 pub use scores::{KlingGupta, Pair, kling_gupta, nash_sutcliffe};
+pub use search::{Asked, Found, Search, refine, search};
 pub use site::{Model, Site, compare, site_lanes};
+pub use trials::{Trial, Trials};
 pub use year::{ComparedYear, DayPair, SurveyPair};

@@ -9,9 +9,9 @@ use serde::Serialize;
 
 /// Whether a pillow's year is whole is asked from this day of the water year on: 1 December where it starts on
 /// 1 October. Snow before it hardly makes a peak.
-const WHOLE_FROM_DAY: usize = 62;
+pub(super) const WHOLE_FROM_DAY: usize = 62;
 /// A pillow's year may lack this many days from there to melt-out, as a year of weather may.
-const MISSING_DAYS_ALLOWED: usize = 15;
+pub(super) const MISSING_DAYS_ALLOWED: usize = 15;
 /// A course is surveyed so many days before or after the survey date, at most.
 const SURVEY_REACH_DAYS: usize = 5;
 
@@ -86,7 +86,7 @@ impl ComparedYear {
         let is_whole = kind == Kind::Pillow && is_whole(&observed, [found.melt_out, made.melt_out]);
         let [found, made] = if is_whole { [found, made] } else { [Season::NONE; 2] };
         let pairs: Vec<Pair> = days.iter().filter_map(DayPair::pair).collect();
-        let survey = |date: &MonthDay| survey(&days, first, day_of_water_year(first, *date), kind);
+        let survey = |date: &MonthDay| survey(&days, first, *date, kind);
         Self {
             water_year,
             first,
@@ -169,18 +169,28 @@ fn is_whole(observed: &[Option<f64>], melt_outs: [Outcome; 2]) -> bool {
 }
 
 /// The reading of the survey day, for a course the one nearest to it; of two equally near the earlier.
-fn survey(days: &[DayPair], first: NaiveDate, day: usize, kind: Kind) -> Option<SurveyPair> {
+fn survey(days: &[DayPair], first: NaiveDate, survey: MonthDay, kind: Kind) -> Option<SurveyPair> {
+    let observed: Vec<Option<f64>> = days.iter().map(|day| day.observed_mm).collect();
+    let day = survey_day(&observed, first, survey, kind)?;
+    let pair = days[day].pair()?;
+    Some(SurveyPair { date: date_of(first, day + 1), observed_mm: pair.observed, modelled_mm: pair.modelled })
+}
+
+/// The day of the year, from 0, whose reading is the survey's.
+pub(super) fn survey_day(
+    observed: &[Option<f64>],
+    first: NaiveDate,
+    survey: MonthDay,
+    kind: Kind,
+) -> Option<usize> {
     let reach = match kind {
         Kind::Pillow => 0,
         Kind::Course => SURVEY_REACH_DAYS,
     };
-    let read = (1..).zip(days).filter_map(|(at, pair)| Some((at, pair.pair()?)));
-    let near = read.filter(|(at, _)| day.abs_diff(*at) <= reach);
-    near.min_by_key(|(at, _)| day.abs_diff(*at)).map(|(at, pair)| SurveyPair {
-        date: date_of(first, at),
-        observed_mm: pair.observed,
-        modelled_mm: pair.modelled,
-    })
+    let asked = day_of_water_year(first, survey) - 1;
+    let read = observed.iter().enumerate().filter(|(_, swe_mm)| swe_mm.is_some());
+    let near = read.map(|(day, _)| day).filter(|day| asked.abs_diff(*day) <= reach);
+    near.min_by_key(|day| asked.abs_diff(*day))
 }
 
 #[cfg(test)]

@@ -28,6 +28,11 @@ pub(super) fn wet_day_stream(seed: u64, realization: u32) -> ChaCha8Rng {
     numbered(seed, (1 << 35) + u64::from(realization))
 }
 
+/// The stream of a searcher for parameters: beyond all others.
+pub fn search_stream(seed: u64, searcher: usize) -> ChaCha8Rng {
+    numbered(seed, (1 << 36) + searcher as u64)
+}
+
 fn numbered(seed: u64, stream: u64) -> ChaCha8Rng {
     let mut random = ChaCha8Rng::seed_from_u64(seed);
     random.set_stream(stream);

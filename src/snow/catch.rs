@@ -51,6 +51,12 @@ impl GaugeMultiplier {
     }
 }
 
+/// What fell over what the gauge caught, of a day with this snow fraction.
+#[inline(always)]
+pub(super) fn caught(snow_fraction: f64, of_rain: f64, of_snow: f64) -> f64 {
+    snow_fraction * of_snow + (1.0 - snow_fraction) * of_rain
+}
+
 /// How rain and snow are told apart at a station.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct StationPhase {
@@ -84,6 +90,6 @@ impl StationPhase {
 pub fn correct_catch(series: &mut Series, multiplier: GaugeMultiplier, phase: StationPhase) {
     for day in 0..series.precipitation_mm.len() {
         let snow = phase.snow_fraction(series, day);
-        series.precipitation_mm[day] *= snow * multiplier.snow + (1.0 - snow) * multiplier.rain;
+        series.precipitation_mm[day] *= caught(snow, multiplier.rain, multiplier.snow);
     }
 }

@@ -6,10 +6,10 @@
 //! are 0 there, and all rain falls on bare ground.
 
 use super::block::{Detail, YearBlock};
-use super::lanes::{Lanes, ROW_MULTIPLE};
+use super::lanes::{Catch, Lanes, ROW_MULTIPLE};
 use super::params::DegreeRule;
 use super::passes::{
-    StoreRows, diurnal_degrees_row, mean_degrees_row, mean_row, patches_row, split_row, store_row,
+    StoreRows, catch_row, diurnal_degrees_row, mean_degrees_row, mean_row, patches_row, split_row, store_row,
     wet_bulb_row,
 };
 use super::phase_rule::PhaseRule;
@@ -27,6 +27,8 @@ pub(super) struct State {
     mean: Vec<f64>,
     /// No lanes where the air's temperature tells rain from snow.
     wet_bulb: Vec<f64>,
+    /// No lanes where the record is corrected for catch already.
+    precipitation_factor: Vec<f64>,
     melt_degrees: Vec<f64>,
     freeze_degrees: Vec<f64>,
     melt: Vec<f64>,
@@ -49,6 +51,7 @@ impl State {
             cold: row_if(lanes.has_stores()),
             mean: row(),
             wet_bulb: row_if(lanes.has_wet_bulb()),
+            precipitation_factor: row_if(lanes.catch.is_some()),
             melt_degrees: row(),
             freeze_degrees: row(),
             melt: row(),
@@ -121,28 +124,30 @@ fn run_year<const IS_PLAIN: bool>(
         mean_row(&mut state.mean[mean_from..], weather.mean_c[day], &offset[mean_from..]);
         let mut from = with_snow;
         if is_wet {
-            let share = &lanes.precipitation_factor[month.clone()];
+            let factor = &lanes.precipitation_factor[month.clone()];
             if has_wet_bulb {
                 let humidity_pct = weather.relative_humidity_pct[day];
                 wet_bulb_row(&mut state.wet_bulb, &state.mean, &lanes.pressure_kpa, humidity_pct);
             }
-            let State { input, mean, wet_bulb, .. } = &mut *state;
-            let told_by = if has_wet_bulb { &*wet_bulb } else { &*mean };
-            let fallen = &mut fallen;
+            let State { input, mean, wet_bulb, precipitation_factor, .. } = &mut *state;
+            let mut wet_day = WetDay {
+                precipitation_mm,
+                factor,
+                told_by: if has_wet_bulb { &*wet_bulb } else { &*mean },
+                catch: lanes.catch.as_ref().filter(|_| !IS_PLAIN).map(|catch| CatchRow {
+                    catch,
+                    told_by_c: catch.told_by_c(weather, day),
+                    into: precipitation_factor,
+                }),
+            };
+            let (fallen, today) = (&mut fallen, &mut wet_day);
             match lanes.phase {
-                PhaseRule::Linear { .. } => {
-                    split(fallen, input, lanes, told_by, precipitation_mm, share, linear_snow_fraction);
-                }
+                PhaseRule::Linear { .. } => split(fallen, input, lanes, today, linear_snow_fraction),
                 PhaseRule::Step { .. } => {
-                    let snow_fraction = |mean, warm, _| step_snow_fraction(mean, warm);
-                    split(fallen, input, lanes, told_by, precipitation_mm, share, snow_fraction);
+                    split(fallen, input, lanes, today, |mean, warm, _| step_snow_fraction(mean, warm));
                 }
-                PhaseRule::Tanh => {
-                    split(fallen, input, lanes, told_by, precipitation_mm, share, tanh_snow_fraction);
-                }
-                PhaseRule::SCurve { .. } => {
-                    split(fallen, input, lanes, told_by, precipitation_mm, share, s_curve_snow_fraction);
-                }
+                PhaseRule::Tanh => split(fallen, input, lanes, today, tanh_snow_fraction),
+                PhaseRule::SCurve { .. } => split(fallen, input, lanes, today, s_curve_snow_fraction),
             }
             if has_patches {
                 patches_row(fallen.snow, &mut state.input, &lanes.snowfall_multiplier);
@@ -210,6 +215,25 @@ struct Fallen<'b> {
     snow: &'b mut [f64],
 }
 
+/// What a wet day brings to the split, and the lanes' rows of it.
+struct WetDay<'d> {
+    precipitation_mm: f64,
+    /// Times the station's precipitation.
+    factor: &'d [f64],
+    /// The temperature that tells rain from snow.
+    told_by: &'d [f64],
+    /// Where lanes correct the gauge's catch.
+    catch: Option<CatchRow<'d>>,
+}
+
+/// The correction for catch of a day.
+struct CatchRow<'d> {
+    catch: &'d Catch,
+    /// The temperature that tells rain from snow at the station.
+    told_by_c: f64,
+    into: &'d mut [f64],
+}
+
 /// Where the store puts a day: SWE as the next day begins, and the day's fluxes.
 struct Out<'b> {
     swe: &'b mut [f64],
@@ -263,14 +287,20 @@ fn split(
     fallen: &mut Fallen<'_>,
     input: &mut [f64],
     lanes: &Lanes,
-    told_by: &[f64],
-    precipitation_mm: f64,
-    factor: &[f64],
+    today: &mut WetDay<'_>,
     snow_fraction: impl Fn(f64, f64, f64) -> f64,
 ) {
     let Fallen { rain, snow } = fallen;
     let (warm, per_c) = (&lanes.phase_warm_c, &lanes.phase_per_c);
-    split_row(snow, rain, input, told_by, warm, per_c, factor, precipitation_mm, snow_fraction);
+    let WetDay { precipitation_mm, factor, told_by, catch } = today;
+    let factor = match catch {
+        None => *factor,
+        Some(CatchRow { catch, told_by_c, into }) => {
+            catch_row(into, factor, &catch.rain, &catch.snow, warm, per_c, *told_by_c, &snow_fraction);
+            &**into
+        }
+    };
+    split_row(snow, rain, input, told_by, warm, per_c, factor, *precipitation_mm, snow_fraction);
 }
 
 #[inline(always)]

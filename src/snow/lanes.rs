@@ -1,13 +1,15 @@
 //! Lanes: every band at every level as one column of numbers. The only place where options meet.
 
+use super::catch::GaugeMultiplier;
 use super::means::Means;
 use super::melt::{canopy_share, degree_day_factor};
 use super::params::{DegreeRule, SnowParams};
 use super::phase_rule::PhaseRule;
 use super::step::COLD_PER_MM_C;
-use super::{class_multipliers, highest_radiation, potential_radiation, standard_pressure_kpa};
+use super::{class_multipliers, highest_radiation, potential_radiation, standard_pressure_kpa, wet_bulb_c};
 use crate::basin::{Basin, Ground};
 use crate::perturb::MonthlyChange;
+use crate::weather::YearView;
 
 /// Rows are padded to a multiple of this many lanes: one AVX-512 register, or a cache line.
 pub const ROW_MULTIPLE: usize = 8;
@@ -66,11 +68,31 @@ pub struct Lanes {
     pub(super) refreeze_fraction: Vec<f64>,
     /// Pressure at which the wet bulb is taken, kPa; no lanes where the air's temperature tells rain from snow.
     pub(super) pressure_kpa: Vec<f64>,
+    /// The correction of the gauge's catch; none where the record is corrected already.
+    pub(super) catch: Option<Catch>,
     /// What the cold store and the loss to the air need; none without them.
     pub(super) stores: Option<Stores>,
     /// Whether every year begins on bare ground.
     pub(super) starts_bare: bool,
     has_ground: bool,
+}
+
+/// Columns of the gauge's multipliers, and where the gauge stands.
+#[derive(Debug, Clone, PartialEq)]
+pub(super) struct Catch {
+    pub rain: Vec<f64>,
+    pub snow: Vec<f64>,
+    /// Pressure at the station, kPa, where the wet bulb tells rain from snow.
+    pressure_kpa: Option<f64>,
+}
+
+impl Catch {
+    /// The temperature that tells rain from snow at the station on a day, degC.
+    pub fn told_by_c(&self, weather: &YearView<'_>, day: usize) -> f64 {
+        let mean_c = weather.mean_c[day];
+        let wet_bulb = |kpa| wet_bulb_c(mean_c, weather.relative_humidity_pct[day], kpa);
+        self.pressure_kpa.map_or(mean_c, wet_bulb)
+    }
 }
 
 /// Columns of the cold store and of the loss to the air.
@@ -120,6 +142,7 @@ impl Lanes {
             holding_fraction: row(),
             refreeze_fraction: row(),
             pressure_kpa: if options.wet_bulb { vec![standard_pressure_kpa(0.0); width] } else { Vec::new() },
+            catch: None,
             stores: (options.cold_content.is_some() || options.sublimation.is_some()).then(|| Stores {
                 loss_mm: vec![0.0; 12 * width],
                 loss_of_snow: row(),
@@ -146,6 +169,26 @@ impl Lanes {
             }
         }
         lanes
+    }
+
+    /// The same on a record that is as the gauge caught it: each group corrects it by multipliers of its own, at the station's
+    /// temperature, as [`correct_catch`](super::correct_catch) does for all. Only lanes whose parameters are searched for need
+    /// this; the precipitation of the ledger is what fell.
+    pub fn on_the_gauge(mut self, multipliers: &[GaugeMultiplier], station_m: f64) -> Self {
+        let mut catch = Catch {
+            rain: vec![1.0; self.width],
+            snow: vec![1.0; self.width],
+            pressure_kpa: self.has_wet_bulb().then(|| standard_pressure_kpa(station_m)),
+        };
+        let lanes_of_a_group = self.means.places * self.means.classes;
+        for (group, multiplier) in multipliers.iter().enumerate().take(self.means.groups) {
+            for place in 0..lanes_of_a_group {
+                let lane = place * self.means.groups + group;
+                (catch.rain[lane], catch.snow[lane]) = (multiplier.rain, multiplier.snow);
+            }
+        }
+        self.catch = Some(catch);
+        self
     }
 
     /// Column of a place of a group, both counted from 0 in the order in which they were given: its lane, or the mean of its
@@ -215,10 +258,11 @@ impl Lanes {
         self.stores.as_ref().is_some_and(|stores| stores.has_sublimation)
     }
 
-    /// Whether any option asks for more than the plain model's row passes.
+    /// Whether a day needs more than the plain model's row passes on a record that is corrected for catch.
     pub(super) fn has_options(&self) -> bool {
         let has_radiation = self.degree_day_factor.is_some();
-        has_radiation || self.has_patches() || self.has_wet_bulb() || self.has_stores()
+        let has_option = has_radiation || self.has_patches() || self.has_wet_bulb() || self.has_stores();
+        has_option || self.catch.is_some()
     }
 
     /// Whether radiation or trees make the melt factor differ from the degree-day factor.

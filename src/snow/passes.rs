@@ -3,6 +3,7 @@
 //! Every row is a parameter of its own: so the compiler knows that no two of them overlap, and makes vector code without
 //! asking at run time. The equations are the scalar functions of this room.
 
+use super::catch::caught;
 use super::{LaneConst, LaneDay, Pack, diurnal_degrees, mean_degrees, step, wet_bulb_c};
 
 /// Station temperature carried to every lane.
@@ -50,6 +51,29 @@ pub(super) fn wet_bulb_row(
 ) {
     for ((wet_bulb, mean), pressure) in wet_bulb.iter_mut().zip(mean).zip(pressure_kpa) {
         *wet_bulb = wet_bulb_c(*mean, relative_humidity_pct, *pressure);
+    }
+}
+
+/// What every lane's precipitation is multiplied by on a day, by its place and its month, `factor`, and by its correction of
+/// the gauge's catch, which goes with the snow fraction at the station.
+#[inline(always)]
+#[expect(clippy::too_many_arguments, reason = "a row a parameter, see the top of this file")]
+pub(super) fn catch_row(
+    corrected: &mut [f64],
+    factor: &[f64],
+    of_rain: &[f64],
+    of_snow: &[f64],
+    warm: &[f64],
+    per_c: &[f64],
+    station_c: f64,
+    snow_fraction: impl Fn(f64, f64, f64) -> f64,
+) {
+    let n = corrected.len();
+    let (factor, of_rain, of_snow) = (&factor[..n], &of_rain[..n], &of_snow[..n]);
+    let (warm, per_c) = (&warm[..n], &per_c[..n]);
+    for lane in 0..n {
+        let snow = snow_fraction(station_c, warm[lane], per_c[lane]);
+        corrected[lane] = factor[lane] * caught(snow, of_rain[lane], of_snow[lane]);
     }
 }
 

@@ -81,6 +81,45 @@ impl PhaseRule {
         }
     }
 
+    /// The same rule moved to another temperature of half snow, its range as wide as it was; `tanh` stays where it is.
+    pub fn with_half_snow_at(self, half_snow_at_c: f64) -> Self {
+        match self {
+            Self::Linear { snow_only_below_c, rain_only_above_c } => {
+                Self::linear_about(half_snow_at_c, rain_only_above_c - snow_only_below_c)
+            }
+            Self::Step { .. } => Self::Step { half_snow_at_c },
+            Self::Tanh => Self::Tanh,
+            Self::SCurve { mixed_range_c, .. } => Self::SCurve { half_snow_at_c, mixed_range_c },
+        }
+    }
+
+    /// Width of the range with both rain and snow, degC; none of `step` and `tanh`.
+    pub fn mixed_range_c(self) -> Option<f64> {
+        match self {
+            Self::Linear { snow_only_below_c, rain_only_above_c } => {
+                Some(rain_only_above_c - snow_only_below_c)
+            }
+            Self::SCurve { mixed_range_c, .. } => Some(mixed_range_c),
+            Self::Step { .. } | Self::Tanh => None,
+        }
+    }
+
+    /// The same rule with another width of its range about the same temperature of half snow.
+    pub fn with_mixed_range(self, mixed_range_c: f64) -> Self {
+        match self {
+            Self::Linear { .. } => Self::linear_about(self.half_snow_c(), mixed_range_c),
+            Self::SCurve { half_snow_at_c, .. } => Self::SCurve { half_snow_at_c, mixed_range_c },
+            Self::Step { .. } | Self::Tanh => self,
+        }
+    }
+
+    fn linear_about(half_snow_at_c: f64, mixed_range_c: f64) -> Self {
+        Self::Linear {
+            snow_only_below_c: half_snow_at_c - mixed_range_c / 2.0,
+            rain_only_above_c: half_snow_at_c + mixed_range_c / 2.0,
+        }
+    }
+
     pub(super) fn check(self, faults: &mut Vec<Fault>) {
         let key = |name: &str| format!("snow.rain_snow.{name}");
         let of_stations = "-0.4 to 2.4 degC holds 95 % of stations";
