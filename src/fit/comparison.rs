@@ -113,6 +113,19 @@ impl Comparison {
             by_year,
         }
     }
+
+    /// The same of some of the years.
+    pub fn of_years(&self, is_in: impl Fn(i32) -> bool) -> Self {
+        let about = About {
+            site: self.site.clone(),
+            elevation_m: self.elevation_m,
+            kind: self.kind,
+            file: self.file,
+        };
+        let by_year = self.by_year.iter().filter(|year| is_in(year.water_year)).cloned().collect();
+        let survey_dates: Vec<MonthDay> = self.surveys.iter().map(|survey| survey.survey).collect();
+        Self::of(about, by_year, &survey_dates)
+    }
 }
 
 impl Bias {

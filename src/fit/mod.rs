@@ -4,23 +4,38 @@
 //! one water year of both, `comparison` puts a site's years together. `place` takes any place day by day.
 
 mod comparison;
+mod day_of_year_mean;
 mod held_against;
+#[cfg(test)]
+mod invented;
+mod judged;
 mod objective;
 mod parameter;
 mod place;
+mod profile;
+mod run;
 mod scores;
 mod search;
 mod site;
+mod slope;
+mod space;
+mod splits;
 mod sums;
 mod trials;
 mod year;
 
 pub use comparison::{Bias, Comparison, DateError, SurveyBias};
+pub use judged::{Held, Judged};
 pub use objective::Objective;
 pub use parameter::{PARAMETERS, Parameter, Parameters};
 pub use place::{ObservedAt, Place, PlaceDays, PlaceYear, place_years};
+pub use profile::Profile;
+pub use run::{FitEnd, FitResult, Fitted, Follow, LEAST_WINTERS, Plan, Stage, Unfollowed, fit};
 pub use scores::{KlingGupta, Pair, kling_gupta, nash_sutcliffe};
 pub use search::{Asked, Found, Search, refine, search};
 pub use site::{Model, Site, compare, site_lanes};
+pub use slope::Slope;
+pub use space::{Bounded, Space, Value};
+pub use splits::{Split, Winter, winters_of};
 pub use trials::{Trial, Trials};
 pub use year::{ComparedYear, DayPair, SurveyPair};

@@ -72,7 +72,7 @@ pub fn search<E>(
         .map(|(asked, value)| Found { point: asked.point.clone(), value })
         .collect();
     for step in 1..plan.evaluations {
-        let chance = 1.0 - libm::log(step as f64) / libm::log(plan.evaluations as f64);
+        let chance = chance_of_change(step, plan.evaluations);
         for ((asked, found), random) in asked.iter_mut().zip(&found).zip(&mut streams) {
             asked.point = changed(&found.point, chance, random);
         }
@@ -130,6 +130,11 @@ fn neighbours(searcher: usize, point: &[f64], step: f64) -> impl Iterator<Item =
     (0..point.len()).flat_map(move |at| [moved(at, step), moved(at, -step)])
 }
 
+/// The chance with which a parameter changes in a step, from 1, of so many.
+fn chance_of_change(step: usize, steps: usize) -> f64 {
+    1.0 - libm::log(step as f64) / libm::log(steps as f64)
+}
+
 fn changed(point: &[f64], chance: f64, random: &mut ChaCha8Rng) -> Vec<f64> {
     let mut is_changed: Vec<bool> = point.iter().map(|_| random.random::<f64>() < chance).collect();
     if !is_changed.contains(&true) {
@@ -163,3 +168,6 @@ fn turned_back(value: f64) -> f64 {
         value
     }
 }
+
+#[cfg(test)]
+mod tests;

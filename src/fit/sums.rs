@@ -142,3 +142,6 @@ pub(super) fn sums_of_year(
     }
     sums
 }
+
+#[cfg(test)]
+mod tests;

@@ -115,3 +115,6 @@ impl<'a> Trials<'a> {
         Lanes::new(&groups).on_the_gauge(&gauges, self.station_m)
     }
 }
+
+#[cfg(test)]
+mod tests;

@@ -6,6 +6,7 @@ mod engine;
 mod ensemble;
 mod findings;
 mod mass;
+mod on_the_gauge;
 mod options;
 mod patches;
 mod realizations;

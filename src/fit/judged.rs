@@ -1,0 +1,106 @@
+//! A set of parameters judged on some of the years, site by site, by what a site's years together are told by.
+
+use super::comparison::{Bias, Comparison, DateError};
+use super::day_of_year_mean::skill;
+use super::parameter::Parameters;
+use super::scores::KlingGupta;
+use super::site::{Model, Site, compare};
+use super::slope::Slope;
+use super::splits::Winter;
+use crate::basin::Basin;
+use crate::season::SeasonSettings;
+use crate::snow::{OpenLedger, StationPhase, correct_catch};
+use crate::weather::Series;
+use serde::Serialize;
+
+/// What is fitted, and what it is held against.
+#[derive(Debug, Clone, Copy)]
+pub struct Held<'a> {
+    /// Sites with observed snow.
+    pub sites: &'a [Site<'a>],
+    /// The years in use, precipitation as the gauge caught it.
+    pub weather: &'a Series,
+    /// The basin.
+    pub basin: &'a Basin,
+    /// Elevation of the weather station, m.
+    pub station_m: f64,
+    /// Dates.
+    pub season: &'a SeasonSettings,
+}
+
+impl Held<'_> {
+    /// The sites' years under some parameters.
+    ///
+    /// # Errors
+    /// A ledger that does not close.
+    pub(super) fn compared(&self, parameters: &Parameters) -> Result<Vec<Comparison>, OpenLedger> {
+        let mut weather = self.weather.clone();
+        correct_catch(&mut weather, parameters.gauge, StationPhase::of(&parameters.snow, self.station_m));
+        let basin = Basin {
+            temperature: parameters.temperature.clone(),
+            precipitation: parameters.precipitation,
+            ..self.basin.clone()
+        };
+        let model = Model {
+            basin: &basin,
+            station_m: self.station_m,
+            snow: &parameters.snow,
+            weather: &weather,
+            season: self.season,
+        };
+        compare(self.sites, &model)
+    }
+}
+
+/// A site's scores over some of its years. Errors are modelled less observed.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct Judged {
+    /// The site.
+    pub site: String,
+    /// Years with a reading.
+    pub years: usize,
+    /// Nash-Sutcliffe efficiency over all readings.
+    pub nash_sutcliffe: Option<f64>,
+    /// Kling-Gupta efficiency over the readings on which snow was observed or modelled.
+    pub kling_gupta: Option<KlingGupta>,
+    /// Skill above the mean of the other years on the same day.
+    pub skill_above_mean: Option<f64>,
+    /// Peak SWE.
+    pub peak: Option<Bias>,
+    /// SWE on the first survey date.
+    pub survey: Option<Bias>,
+    /// Melt-out.
+    pub melt_out: Option<DateError>,
+    /// Error of SWE on the first survey date, mm, by mean temperature of the winter, degC: 0 where the model answers to a
+    /// warmer winter as snow does.
+    pub survey_error_by_winter_mm_per_c: Option<Slope>,
+}
+
+impl Judged {
+    /// A site's years that are judged.
+    pub(super) fn of(comparison: &Comparison, winters: &[Winter], is_judged: &[bool]) -> Self {
+        let judged: Vec<&Winter> =
+            winters.iter().zip(is_judged).filter(|(_, is_in)| **is_in).map(|(winter, _)| winter).collect();
+        let winter_of = |water_year: i32| judged.iter().find(|winter| winter.water_year == water_year);
+        let part = comparison.of_years(|water_year| winter_of(water_year).is_some());
+        let pairs: Vec<(f64, f64)> = part
+            .by_year
+            .iter()
+            .filter_map(|year| {
+                let survey = year.surveys[0]?;
+                Some((winter_of(year.water_year)?.mean_c, survey.modelled_mm - survey.observed_mm))
+            })
+            .collect();
+        Self {
+            site: part.site.clone(),
+            years: part.by_year.len(),
+            nash_sutcliffe: part.nash_sutcliffe,
+            kling_gupta: part.kling_gupta,
+            skill_above_mean: skill(&comparison.by_year, |water_year| winter_of(water_year).is_some()),
+            peak: part.peak,
+            survey: part.surveys[0].bias,
+            melt_out: part.melt_out,
+            survey_error_by_winter_mm_per_c: Slope::of(&pairs),
+        }
+    }
+}
