@@ -15,9 +15,10 @@ use crate::fit::{Comparison, Model, Site, compare};
 use crate::observed::Observations;
 use crate::perturb::{MonthlyChange, Recipe};
 use crate::report::{Input, Origin, Reader};
-use crate::scenario::{Document, Draft, ObservedTyped, Scenario};
+use crate::scenario::{Document, Draft, FITTED_KEY, Fitted, ObservedTyped, Scenario, read_fitted};
 use crate::season::Measures;
 use crate::snow::{LaneSpec, Lanes, OpenLedger, StationPhase, correct_catch};
+use crate::table::Encoding;
 use crate::units::cubic_hectometres;
 use crate::weather::{Record, Series};
 use std::path::Path;
@@ -44,7 +45,9 @@ pub(super) struct Ready {
     pub defaults: Vec<DefaultInForce>,
     /// What was observed at each site of the scenario.
     pub observed: Vec<Observations>,
-    /// The scenario, the bands, the weather, the sites, as read.
+    /// What is in force from a file of fitted parameters.
+    pub fitted: Option<Fitted>,
+    /// The scenario, the bands, the weather, the sites, the file of fitted parameters, as read.
     pub files: Vec<InputFile>,
     /// The last part of the scenario's name without the ending.
     pub stem: Option<String>,
@@ -60,12 +63,14 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
         draft.defaults.retain(|default| default.key != "seed");
     }
     let mut faults = std::mem::take(&mut draft.faults);
+    let fitted = take(read_fitted_of(&mut draft, &document, &folder), &mut faults).flatten();
     let bands = take(read_bands_of(&draft, &folder), &mut faults).flatten();
     let record = take(read_record_of(&draft, &folder), &mut faults).flatten();
     let observed = read_observed_of(&draft, &folder, &mut faults);
     for (key, name) in &draft.named_files {
         let is_read = match key.as_str() {
             key if key.starts_with("basin.") => draft.hypsometry.is_some(),
+            FITTED_KEY => true,
             "weather.file" => draft.record_source.is_some() && draft.season.is_some(),
             of_site => draft.observed.iter().flatten().any(|site| of_site == file_key(site)),
         };
@@ -133,6 +138,8 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             }
             unlikely.extend(baseline_years.unlikely());
             unlikely.extend(of_generator);
+            let (fitted, fitted_file) = fitted.unzip();
+            files.extend(fitted_file);
             let mut defaults = draft.defaults;
             note_baseline_years(&baseline_years, &mut defaults);
             let mut ready = Ready {
@@ -148,6 +155,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 unlikely,
                 defaults,
                 observed: observations,
+                fitted,
                 files,
                 stem,
             };
@@ -234,6 +242,20 @@ fn read_observed_of(draft: &Draft, folder: &Path, faults: &mut Vec<Fault>) -> Ve
     read
 }
 
+/// Reads the file of fitted parameters, and takes from it what the scenario does not state itself.
+fn read_fitted_of(
+    draft: &mut Draft,
+    document: &Document<'_>,
+    folder: &Path,
+) -> Result<Option<(Fitted, InputFile)>, Vec<Fault>> {
+    let Some(name) = draft.fitted_file.clone() else {
+        return Ok(None);
+    };
+    let file = read_data(folder, &name, FITTED_KEY, Encoding::Utf8).map_err(|fault| vec![fault])?;
+    let values = read_fitted(&file.name, &file.text)?;
+    Ok(draft.take_fitted(&name, &values, document).map(|fitted| (fitted, file)))
+}
+
 fn file_key(site: &ObservedTyped) -> String {
     format!("{}.file", site.key)
 }
@@ -263,7 +285,8 @@ impl Ready {
     /// What was read and the command that repeats it, without the flags that change no result.
     pub fn origin(&self, command: &str, path: &Path, shared: &Shared) -> Origin {
         let seed = shared.seed.map_or(String::new(), |seed| format!(" --seed {seed}"));
-        let roles = ["scenario", "bands", "weather"].into_iter().chain(std::iter::repeat("observed_swe"));
+        let of_sites = std::iter::repeat_n("observed_swe", self.observed.len());
+        let roles = ["scenario", "bands", "weather"].into_iter().chain(of_sites).chain(["fitted"]);
         let inputs = roles.zip(&self.files).map(|(role, file)| Input {
             role,
             path: file.name.clone(),

@@ -78,6 +78,11 @@ impl<'t> Document<'t> {
         }
     }
 
+    /// Whether a key was typed.
+    pub(super) fn has(&self, key: &str) -> bool {
+        self.places.contains_key(key)
+    }
+
     /// The line, from 1, on which a byte stands, and the line's first byte.
     pub(super) fn line_at(&self, byte: usize) -> (usize, usize) {
         let line = self.line_starts.partition_point(|start| *start <= byte);

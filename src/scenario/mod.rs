@@ -9,6 +9,8 @@ mod days;
 mod document;
 mod draw;
 mod elevation;
+mod fit;
+mod fitted;
 mod format;
 mod hypsometry;
 mod levels;
@@ -31,6 +33,8 @@ mod weather;
 pub use basin::BasinTyped;
 pub use document::Document;
 pub use draw::{Drawing, Located, draw, located, unlikely_lines};
+pub use fit::FitTyped;
+pub use fitted::{FITTED_KEY, Fitted, read_fitted};
 pub use hypsometry::HypsometryTyped;
 pub use observed::ObservedTyped;
 pub use realizations::RealizationsTyped;
@@ -40,6 +44,7 @@ pub use weather::{RecordSource, WeatherTyped};
 
 use crate::defaults::DefaultInForce;
 use crate::fault::{Fault, Unlikely};
+use crate::fit::Parameters;
 use crate::season::SeasonSettings;
 use crate::snow::SnowParams;
 use notes::Notes;
@@ -71,6 +76,8 @@ pub struct Scenario {
     pub report: ReportTyped,
     /// Sites with observed snow.
     pub observed: Vec<ObservedTyped>,
+    /// How the model is fitted to it.
+    pub fit: FitTyped,
 }
 
 /// What could be read of a scenario, part by part: a part with a fault is missing, the others can still be used to look
@@ -95,6 +102,8 @@ pub struct Draft {
     pub season: Option<SeasonSettings>,
     /// `[snow]`.
     pub snow: Option<SnowParams>,
+    /// The file of fitted parameters, as typed.
+    pub fitted_file: Option<String>,
     /// `[warming]`.
     pub warming: Option<WarmingTyped>,
     /// `[realizations]`.
@@ -103,6 +112,8 @@ pub struct Draft {
     pub report: Option<ReportTyped>,
     /// `[[observed_swe]]`, a site each.
     pub observed: Vec<Option<ObservedTyped>>,
+    /// `[fit]`.
+    pub fit: Option<FitTyped>,
     /// Every fault of the text.
     pub faults: Vec<Fault>,
     /// What is allowed but unlikely.
@@ -125,6 +136,7 @@ impl Draft {
             realizations: self.realizations.clone()?,
             report: self.report?,
             observed: self.observed.iter().cloned().collect::<Option<_>>()?,
+            fit: self.fit.clone()?,
         })
     }
 }
@@ -150,15 +162,61 @@ pub fn read(document: &Document<'_>) -> Draft {
     let (record_source, weather) = weather::read(top.required_section("weather"));
     let has_daily_range = record_source.as_ref().is_none_or(RecordSource::has_daily_range);
     let season = season::read(top.section("season"), is_southern);
-    let snow = snow::read(top.section("snow"), has_daily_range, is_southern);
+    let mut snow = top.section("snow");
+    let fitted_file = fitted::read(&mut snow);
+    let snow = snow::read(snow, has_daily_range, is_southern);
     let warming = warming::read(top.section("warming"));
     let realizations = realizations::read(top.section("realizations"));
     let report = report::read(top.section("report"));
     let observed = observed::read(top.sections("observed_swe"));
+    // Without its table nothing of a fit is told: only `fit` itself asks for one.
+    let fit = if top.has("fit") {
+        let parameters = parameters(basin.as_ref(), weather.as_ref(), snow);
+        fit::read(top.section("fit"), parameters.as_ref())
+    } else {
+        top.knows("fit");
+        Some(FitTyped::default())
+    };
     top.finish();
-    let parts =
-        (hypsometry, basin, record_source, weather, season, snow, warming, realizations, report, observed);
+    let parts = (
+        hypsometry,
+        basin,
+        record_source,
+        weather,
+        season,
+        snow,
+        warming,
+        realizations,
+        report,
+        observed,
+        fit,
+    );
     let mut draft = notes.into_draft(title, seed, parts);
+    draft.fitted_file = fitted_file;
     document.keep_what_is_certain(&mut draft.faults);
     draft
+}
+
+/// Everything that a fit may change, where all of it could be read.
+fn parameters(
+    basin: Option<&BasinTyped>,
+    weather: Option<&WeatherTyped>,
+    snow: Option<SnowParams>,
+) -> Option<Parameters> {
+    let BasinTyped { temperature, precipitation, .. } = basin?;
+    let gauge = weather?.gauge_multiplier;
+    Some(Parameters { snow: snow?, gauge, temperature: temperature.clone(), precipitation: *precipitation })
+}
+
+impl Scenario {
+    /// Everything that a fit may change.
+    pub fn parameters(&self) -> Parameters {
+        let BasinTyped { temperature, precipitation, .. } = &self.basin;
+        Parameters {
+            snow: self.snow,
+            gauge: self.weather.gauge_multiplier,
+            temperature: temperature.clone(),
+            precipitation: *precipitation,
+        }
+    }
 }

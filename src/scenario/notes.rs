@@ -1,8 +1,8 @@
 //! What is met while a scenario is read: faults, what is unlikely, defaults in force, files it names.
 
 use super::{
-    BasinTyped, Draft, HypsometryTyped, ObservedTyped, RealizationsTyped, RecordSource, ReportTyped,
-    WarmingTyped, WeatherTyped,
+    BasinTyped, Draft, FitTyped, HypsometryTyped, ObservedTyped, RealizationsTyped, RecordSource,
+    ReportTyped, WarmingTyped, WeatherTyped,
 };
 use crate::defaults::DefaultInForce;
 use crate::fault::{Fault, Unlikely};
@@ -30,6 +30,7 @@ type Parts = (
     Option<RealizationsTyped>,
     Option<ReportTyped>,
     Vec<Option<ObservedTyped>>,
+    Option<FitTyped>,
 );
 
 impl Notes {
@@ -45,6 +46,7 @@ impl Notes {
             realizations,
             report,
             observed,
+            fit,
         ) = parts;
         Draft {
             title,
@@ -55,10 +57,12 @@ impl Notes {
             weather,
             season,
             snow,
+            fitted_file: None,
             warming,
             realizations,
             report,
             observed,
+            fit,
             faults: self.faults.into_inner(),
             unlikely: self.unlikely.into_inner(),
             defaults: self.defaults.into_inner(),
