@@ -47,6 +47,11 @@ pub(super) enum Command {
         #[arg(long, value_name = "PLACE", requires = "draw_years")]
         draw_band: Option<String>,
     },
+    /// Search for parameters that bring the model nearest to observed snow; judge them on winters not seen
+    Fit {
+        /// The scenario, a TOML file; `-` reads it from standard input
+        scenario: PathBuf,
+    },
     /// Write station weather, day by day, as CSV: the record as realizations are made from it, or a realization
     Weather {
         /// The scenario, a TOML file; `-` reads it from standard input

@@ -14,7 +14,7 @@ use crate::fault::{Fault, Unlikely};
 use crate::fit::{Comparison, Model, Site, compare};
 use crate::observed::Observations;
 use crate::perturb::{MonthlyChange, Recipe};
-use crate::report::{Input, Origin, Reader};
+use crate::report::{FittedFrom, Input, Origin, Reader};
 use crate::scenario::{Document, Draft, FITTED_KEY, Fitted, ObservedTyped, Scenario, read_fitted};
 use crate::season::Measures;
 use crate::snow::{LaneSpec, Lanes, OpenLedger, StationPhase, correct_catch};
@@ -302,6 +302,12 @@ impl Ready {
     /// Who reads what the command says.
     pub fn reader(&self) -> Reader {
         Reader { units: self.scenario.report.units, starts: self.scenario.season.water_year_starts }
+    }
+
+    /// What is in force from a file of fitted parameters.
+    pub fn fitted_from(&self) -> Option<FittedFrom<'_>> {
+        let Fitted { file, taken, left } = self.fitted.as_ref()?;
+        Some(FittedFrom { file, taken, left })
     }
 
     /// The sites with observed snow.

@@ -69,6 +69,7 @@ fn describe<'a>(
         baseline_years: &ready.baseline_years,
         detrended: ready.detrended.as_ref(),
         sites: ready.sites(),
+        fitted: ready.fitted_from(),
         season: &scenario.season,
         snow: &scenario.snow,
         levels_c: &scenario.warming.levels_c,

@@ -69,7 +69,7 @@ pub(super) fn run(path: &Path, asked: Option<&Asked>, shared: &Shared) -> Result
         }
         publish(&files, into).map_err(|error| unpublished(&error))?;
         if !shared.quiet {
-            say(&comparisons, ready.reader());
+            say(&comparisons, &ready);
             output::complain(&picture.as_ref().and_then(Picture::left_out).unwrap_or_default());
             output::complain(&format!("daily table: {}\n", into.join("daily.csv").display()));
             for figure in figures_at {
@@ -82,15 +82,16 @@ pub(super) fn run(path: &Path, asked: Option<&Asked>, shared: &Shared) -> Result
     daily_csv(&lanes, None, &ready.weather, &mut out).map_err(failure)?;
     out.flush().map_err(|error| output::written(&error))?;
     if !shared.quiet {
-        say(&comparisons, ready.reader());
+        say(&comparisons, &ready);
     }
     Ok(())
 }
 
 /// Says how near the model comes to observed snow.
-fn say(comparisons: &[Comparison], reader: Reader) {
+fn say(comparisons: &[Comparison], ready: &Ready) {
+    let fitted_file = ready.fitted_from().map(|fitted| fitted.file);
     for comparison in comparisons {
-        output::complain(&comparison_words(comparison, reader));
+        output::complain(&comparison_words(comparison, fitted_file, ready.reader()));
     }
 }
 

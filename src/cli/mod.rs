@@ -7,6 +7,7 @@ mod check;
 mod clashes;
 mod daily;
 mod failure;
+mod fit;
 mod generator_sheet;
 mod input;
 mod last_words;
@@ -40,6 +41,7 @@ pub fn run() -> u8 {
             let asked = draw_years.map(|years| daily::Asked { years, place: draw_band });
             daily::run(&scenario, asked.as_ref(), &shared)
         }
+        Command::Fit { scenario } => fit::run(&scenario, &shared),
         Command::Weather { scenario, realization } => weather::run(&scenario, realization, &shared),
         Command::Check { scenario, weather } => check::run(&scenario, weather, &shared),
         Command::Start { folder } => start::run(&folder, &shared),

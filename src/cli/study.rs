@@ -114,6 +114,7 @@ fn describe<'a>(
         gauge_multiplier: scenario.weather.gauge_multiplier,
         season: measures.settings(),
         snow: &scenario.snow,
+        fitted: ready.fitted_from(),
         warming: &scenario.warming.warming,
         mean_change_sd_pct: scenario.realizations.mean_change_sd_pct,
         generator: scenario.realizations.generator,

@@ -1,5 +1,6 @@
 //! A fit: searched for on every split of the winters at once, judged on the years it saw and on those it did not.
 
+use super::comparison::Comparison;
 use super::judged::{Held, Judged};
 use super::objective::Objective;
 use super::parameter::Parameters;
@@ -112,6 +113,9 @@ pub struct FitResult {
     pub not_identified: Vec<&'static str>,
     /// Sets of parameters that were tried.
     pub tried: usize,
+    /// The fit on all years against what was observed, a site each.
+    #[serde(skip)]
+    pub compared: Vec<Comparison>,
 }
 
 /// Fits.
@@ -163,12 +167,14 @@ pub fn fit(plan: &Plan<'_>, follow: &mut dyn Follow) -> Result<FitResult, FitEnd
             parameters,
         });
     }
-    let compared = held.compared(&plan.stated)?;
+    let as_stated = held.compared(&plan.stated)?;
     let unfitted = Split::EACH.into_iter().zip(&splits).map(|(split, is_judged)| {
-        (split, compared.iter().map(|comparison| Judged::of(comparison, &winters, is_judged)).collect())
+        (split, as_stated.iter().map(|comparison| Judged::of(comparison, &winters, is_judged)).collect())
     });
     let not_identified = flat.iter().map(|at| profiles[*at].key).collect();
-    Ok(FitResult { unfitted: unfitted.collect(), winters, fitted, profiles, not_identified, tried })
+    let unfitted = unfitted.collect();
+    let compared = held.compared(&fitted[0].parameters)?;
+    Ok(FitResult { winters, fitted, unfitted, profiles, not_identified, tried, compared })
 }
 
 /// The winters of all years in use.

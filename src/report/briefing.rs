@@ -17,14 +17,12 @@ mod yardsticks;
 use super::answer::Answer;
 use super::generator_sheet::snow_mismatch;
 use super::numbers::counted;
+use super::page::page;
 use super::study::Study;
 use super::{cautions, terms};
 use crate::basin::Basin;
 use crate::figures::{Part, Svg};
-use maud::{DOCTYPE, Markup, PreEscaped, html};
-use sha2::{Digest, Sha256};
-
-const STYLE: &str = include_str!("briefing/style.css");
+use maud::{Markup, PreEscaped, html};
 
 /// The page; `of_sites` are the figures of observed snow. Nothing is fetched and no script runs: its own policy forbids
 /// both.
@@ -36,64 +34,49 @@ pub fn briefing_html(
 ) -> Vec<u8> {
     let figures = Figures(figures);
     let findings = study.findings;
-    let policy =
-        format!("default-src 'none'; style-src 'sha256-{}'", base64(&Sha256::digest(STYLE.as_bytes())));
-    let page = html! {
-        (DOCTYPE)
-        html lang="en" {
-            head {
-                meta charset="utf-8";
-                meta http-equiv="Content-Security-Policy" content=(policy);
-                meta name="viewport" content="width=device-width, initial-scale=1";
-                title { (study.title) " – briefing" }
-                style { (PreEscaped(STYLE)) }
-            }
-            body {
-                main {
-                    p.over {
-                        (counted(findings.realizations, "realization")) " of " (counted(findings.years, "water year")) " under "
-                        (counted(findings.levels_c.len(), "warming level")) ", " (bands_in_words(study.basin))
-                    }
-                    h1 { (study.title) }
-                    p.notice {
-                        "This model is not fitted to observed snow. Its parameters are "
-                        @if study.defaults.iter().any(|default| default.key.starts_with("snow.")) { "at least in part the defaults" } @else { "those stated in the scenario" }
-                        ", and they decide headlines: "
-                        @if findings.comparisons.is_empty() { "hold the record's own years below against snow you know before you rely on any number here." } @else {
-                            "read how far it is from " a href=(format!("#{}", observed::ADDRESS)) { "what was observed" } " before you rely on any number here."
-                        }
-                    }
-                    @if let Some(mismatch) = findings.generator.as_ref().and_then(|sheet| snow_mismatch(sheet, study.reader)) {
-                        p.notice { (mismatch) " All that follows is of weather that was made: "
-                            a href=(format!("#{}", generator_sheet::ADDRESS)) { "see how near it comes to the record" } "." }
-                    }
-                    @if !study.unlikely.is_empty() {
-                        p.notice { (counted(study.unlikely.len(), "thing")) " about the input " (if study.unlikely.len() == 1 { "is" } else { "are" })
-                            " " a href=(format!("#{}", assumed::SECOND_LOOK)) { "worth a second look" } "." }
-                    }
-                    (answer::section(study, answer))
-                    (figures.of(Part::Answer))
-                    (snow::section(study, answer))
-                    (snow::timing(study, &figures))
-                    (elevation::section(study, &figures))
-                    (perennial::paragraph(study))
-                    (volumes::section(study, &figures))
-                    (yardsticks::section(study, answer))
-                    (record::section(study, &figures))
-                    (generator_sheet::section(study, &figures))
-                    (normal::section(study))
-                    (observed::section(study, of_sites))
-                    (assumed::section(study))
-                    (list_section("Cautions", &cautions::cautions(study.reader, study.warming, &study.snow.options)))
-                    h2 { "Terms" }
-                    dl { @for (term, meaning) in terms::terms(study.reader) { dt { (term) } dd { (meaning) } } }
-                    (sources::section())
-                    (repeat_section(study))
-                }
-            }
+    let content = html! {
+        p.over {
+            (counted(findings.realizations, "realization")) " of " (counted(findings.years, "water year")) " under "
+            (counted(findings.levels_c.len(), "warming level")) ", " (bands_in_words(study.basin))
         }
+        h1 { (study.title) }
+        @if let Some(fitted) = study.fitted { p.notice { (fitted.words()) } }
+        @else { p.notice {
+            "This model is not fitted to observed snow. Its parameters are "
+            @if study.defaults.iter().any(|default| default.key.starts_with("snow.")) { "at least in part the defaults" } @else { "those stated in the scenario" }
+            ", and they decide headlines: "
+            @if findings.comparisons.is_empty() { "hold the record's own years below against snow you know before you rely on any number here." } @else {
+                "read how far it is from " a href=(format!("#{}", observed::ADDRESS)) { "what was observed" } " before you rely on any number here."
+            }
+        } }
+        @if let Some(mismatch) = findings.generator.as_ref().and_then(|sheet| snow_mismatch(sheet, study.reader)) {
+            p.notice { (mismatch) " All that follows is of weather that was made: "
+                a href=(format!("#{}", generator_sheet::ADDRESS)) { "see how near it comes to the record" } "." }
+        }
+        @if !study.unlikely.is_empty() {
+            p.notice { (counted(study.unlikely.len(), "thing")) " about the input " (if study.unlikely.len() == 1 { "is" } else { "are" })
+                " " a href=(format!("#{}", assumed::SECOND_LOOK)) { "worth a second look" } "." }
+        }
+        (answer::section(study, answer))
+        (figures.of(Part::Answer))
+        (snow::section(study, answer))
+        (snow::timing(study, &figures))
+        (elevation::section(study, &figures))
+        (perennial::paragraph(study))
+        (volumes::section(study, &figures))
+        (yardsticks::section(study, answer))
+        (record::section(study, &figures))
+        (generator_sheet::section(study, &figures))
+        (normal::section(study))
+        (observed::section(study, of_sites))
+        (assumed::section(study))
+        (list_section("Cautions", &cautions::cautions(study.reader, study.warming, &study.snow.options)))
+        h2 { "Terms" }
+        dl { @for (term, meaning) in terms::terms(study.reader) { dt { (term) } dd { (meaning) } } }
+        (sources::section())
+        (repeat_section(study))
     };
-    page.into_string().into_bytes()
+    page(&format!("{} – briefing", study.title), &content)
 }
 
 /// The figures of the page, by the part that they belong to.
@@ -124,22 +107,6 @@ fn repeat_section(study: &Study<'_>) -> Markup {
     }
 }
 
-/// RFC 4648, for the digest in the page's policy.
-fn base64(bytes: &[u8]) -> String {
-    const ALPHABET: &[u8; 64] = b"ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz0123456789+/";
-    let mut text = String::new();
-    for chunk in bytes.chunks(3) {
-        let mut group = [0; 3];
-        group[..chunk.len()].copy_from_slice(chunk);
-        let bits = u32::from_be_bytes([0, group[0], group[1], group[2]]);
-        for place in 0..4 {
-            let digit = (bits >> (18 - 6 * place)) & 63;
-            text.push(if place <= chunk.len() { char::from(ALPHABET[digit as usize]) } else { '=' });
-        }
-    }
-    text
-}
-
 /// `10 elevation bands`; where several share a range, `14 bands in 10 ranges of elevation`.
 fn bands_in_words(basin: &Basin) -> String {
     match (basin.bands.len(), basin.ranges()) {
@@ -147,16 +114,5 @@ fn bands_in_words(basin: &Basin) -> String {
             format!("{} in {} of elevation", counted(bands, "band"), counted(ranges, "range"))
         }
         (bands, _) => counted(bands, "elevation band"),
-    }
-}
-
-#[cfg(test)]
-mod tests {
-    /// RFC 4648, section 10.
-    #[test]
-    fn base64_test_vectors() {
-        assert_eq!(super::base64(b"foobar"), "Zm9vYmFy");
-        assert_eq!(super::base64(b"fooba"), "Zm9vYmE=");
-        assert_eq!(super::base64(b"foob"), "Zm9vYg==");
     }
 }

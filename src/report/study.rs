@@ -7,6 +7,7 @@ use crate::defaults::DefaultInForce;
 use crate::ensemble::RecordYear;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
+use crate::fit::Value;
 use crate::perturb::{GeneratorChoice, Warming};
 use crate::season::{Measure, SeasonSettings};
 use crate::snow::{GaugeMultiplier, SnowParams};
@@ -31,8 +32,10 @@ pub struct Study<'a> {
     pub gauge_multiplier: GaugeMultiplier,
     /// Dates and windows.
     pub season: &'a SeasonSettings,
-    /// Snow parameters; never fitted so far.
+    /// Snow parameters.
     pub snow: &'a SnowParams,
+    /// What is in force from a file of fitted parameters.
+    pub fitted: Option<FittedFrom<'a>>,
     /// Warming's shape and precipitation.
     pub warming: &'a Warming,
     /// Assumed standard deviation of the change of mean precipitation, percent.
@@ -88,6 +91,36 @@ impl Record<'_> {
         let mean = values.iter().sum::<f64>() / n;
         let squares = values.iter().map(|value| (value - mean) * (value - mean)).sum::<f64>();
         (n >= 2.0 && mean > 0.0).then(|| [mean, (squares / (n - 1.0)).sqrt() / mean])
+    }
+}
+
+/// What is in force from a file of fitted parameters.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct FittedFrom<'a> {
+    /// The file, as the scenario names it.
+    pub file: &'a str,
+    /// Keys and values taken from it.
+    pub taken: &'a [Value],
+    /// Keys of it that the scenario states itself, or that its rules and options do not have.
+    pub left: &'a [&'static str],
+}
+
+impl FittedFrom<'_> {
+    /// What was taken, in words.
+    pub fn words(&self) -> String {
+        let keys: Vec<&str> = self.taken.iter().map(|value| value.key).collect();
+        let taken = if keys.is_empty() {
+            format!("Nothing is taken from the fitted parameters of {}", self.file)
+        } else {
+            format!("Fitted to observed snow, from {}: {}", self.file, keys.join(", "))
+        };
+        if self.left.is_empty() {
+            return taken + ".";
+        }
+        format!(
+            "{taken}. Left, since the scenario states them itself or its rules do not have them: {}.",
+            self.left.join(", ")
+        )
     }
 }
 

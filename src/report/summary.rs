@@ -3,7 +3,7 @@
 use super::SCHEMA_VERSION;
 use super::answer::Answer;
 use super::json::lines;
-use super::study::{Input, Origin, Study};
+use super::study::{FittedFrom, Input, Origin, Study};
 use crate::baseline::{Baseline, BaselineYears, Detrended};
 use crate::basin::BeyondStations;
 use crate::defaults::DefaultInForce;
@@ -150,6 +150,7 @@ struct Parameters<'a> {
     season: &'a SeasonSettings,
     snow: &'a SnowParams,
     is_fitted: bool,
+    fitted: Option<FittedFrom<'a>>,
     levels_c: &'a [f64],
     reference_c: f64,
     warming: &'a Warming,
@@ -206,7 +207,8 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
             gauge_multiplier: study.gauge_multiplier,
             season: study.season,
             snow: study.snow,
-            is_fitted: false,
+            is_fitted: study.fitted.is_some_and(|fitted| !fitted.taken.is_empty()),
+            fitted: study.fitted,
             levels_c: &findings.levels_c,
             reference_c: findings.levels_c[findings.reference],
             warming: study.warming,

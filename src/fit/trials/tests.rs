@@ -3,6 +3,7 @@
 use super::super::invented::{STATION_M, basin, day, pillow, season, stated, usual, weather};
 use super::super::{Held, Space};
 use super::*;
+use chrono::Datelike;
 
 /// The efficiency by sums of a trial that corrects the gauge by itself, and the one by passes over the pairs of a run on a
 /// corrected record: the same to 1e-9, what sums of some thousand squares lose. So is their Kling-Gupta efficiency, less
@@ -10,7 +11,7 @@ use super::*;
 #[test]
 fn a_trial_is_scored_as_a_comparison() {
     let weather = weather(6);
-    let seen = pillow(&weather, &stated(), |date, mm| if date.to_string() < *"2003" { mm } else { 0.8 * mm });
+    let seen = pillow(&weather, &stated(), |date, mm| if date.year() < 2003 { mm } else { 0.8 * mm });
     let sites = [Site { name: "pillow", elevation_m: STATION_M, observations: &seen }];
     let (basin, season) = (basin(), season());
     let held =

@@ -16,7 +16,13 @@ pub(super) fn section(study: &Study<'_>, figures: &[Svg]) -> Markup {
     html! { @if !comparisons.is_empty() {
         h2 id=(ADDRESS) { "Observed snow" }
         p {
-            "This model was not fitted to these observations: nothing was adjusted to bring it nearer to them. It is run at each site's own \
+            @if let Some(fitted) = study.fitted {
+                "Parameters of this model come from " code { (fitted.file) } ", which holds what was fitted to observed snow: scores over years that \
+                 the fit has seen flatter it, and its own page says how it did in years that it had not. "
+            } @else {
+                "This model was not fitted to these observations: nothing was adjusted to bring it nearer to them. "
+            }
+            "It is run at each site's own \
              elevation, on the record as observed and without warming, and its SWE as the day begins is held against every reading in the \
              water years in use. Errors are modelled less observed: above 0 the model has more snow than was observed, or keeps it longer."
         }

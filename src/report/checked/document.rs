@@ -9,6 +9,7 @@ use crate::defaults::DefaultInForce;
 use crate::ensemble::BandClimate;
 use crate::findings::GeneratorSheet;
 use crate::perturb::Warming;
+use crate::report::FittedFrom;
 use crate::season::SeasonSettings;
 use crate::snow::{GaugeMultiplier, SnowParams};
 use crate::weather::{Counts, Means, SkippedYear, Suspicion};
@@ -45,6 +46,7 @@ struct Document<'a> {
     observed_swe: Vec<SiteDocument<'a>>,
     season: &'a SeasonSettings,
     snow: &'a SnowParams,
+    fitted: Option<FittedFrom<'a>>,
     is_fitted: bool,
     levels_c: &'a [f64],
     reference_c: f64,
@@ -123,6 +125,7 @@ impl Checked<'_> {
             observed_swe: self.sites.iter().map(SiteDocument::of).collect(),
             season: self.season,
             snow: self.snow,
+            fitted: self.fitted,
             is_fitted: false,
             levels_c: self.levels_c,
             reference_c: self.levels_c[self.reference],

@@ -10,6 +10,7 @@ mod record;
 use super::numbers::{counted, fixed, signed};
 use super::reader::Reader;
 use super::snow_words;
+use super::study::FittedFrom;
 use crate::baseline::{Baseline, BaselineYears, Detrended, Seasons};
 use crate::basin::{Basin, BeyondStations};
 use crate::defaults::DefaultInForce;
@@ -57,6 +58,8 @@ pub struct Checked<'a> {
     pub detrended: Option<&'a Detrended>,
     /// Sites with observed snow.
     pub sites: Vec<Site<'a>>,
+    /// What is in force from a file of fitted parameters.
+    pub fitted: Option<FittedFrom<'a>>,
     /// Dates and windows.
     pub season: &'a SeasonSettings,
     /// Snow parameters.
@@ -138,7 +141,10 @@ impl Checked<'_> {
         self.write_observed(&mut page);
         self.write_levels(&mut page);
         page.head("Snow model");
-        page.line("fitted", "no: its parameters are not fitted to observed snow");
+        match self.fitted {
+            Some(fitted) => page.line("fitted", fitted.words()),
+            None => page.line("fitted", "no: its parameters are not fitted to observed snow"),
+        }
         page.line("rain or snow", snow_words::rain_or_snow(self.reader, self.snow));
         for (name, what) in snow_words::options(self.reader, self.snow) {
             page.line(&name.to_lowercase(), what);

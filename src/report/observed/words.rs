@@ -6,10 +6,14 @@ use crate::fit::{Bias, ComparedYear, Comparison, DateError};
 use crate::season::Outcome;
 use std::fmt::Write;
 
-/// The scores of a site, a line each, and a line a water year.
-pub fn comparison_words(comparison: &Comparison, reader: Reader) -> String {
+/// The scores of a site, a line each, and a line a water year; `fitted_file` has the parameters, where they are fitted.
+pub fn comparison_words(comparison: &Comparison, fitted_file: Option<&str>, reader: Reader) -> String {
+    let parameters = match fitted_file {
+        Some(file) => format!("parameters are those of {file}"),
+        None => "the model is not fitted to them".to_owned(),
+    };
     let mut text = format!(
-        "{}: {}, {}, {} in {}; the model is not fitted to them\n",
+        "{}: {}, {}, {} in {}; {parameters}\n",
         comparison.site,
         comparison.kind.words(),
         reader.elevation(comparison.elevation_m),

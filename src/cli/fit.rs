@@ -1,0 +1,145 @@
+//! `thawline fit`: parameters that bring the model nearest to observed snow, and how it does on winters that it has not seen.
+
+use super::arguments::Shared;
+use super::assemble::{Ready, assemble};
+use super::failure::{Failure, may_be_replaced, unpublished};
+use super::output;
+use super::pool::in_pool;
+use super::progress::{Progress, is_interrupted, mind_interrupts};
+use crate::fault::Fault;
+use crate::fit::{FitEnd, Follow, Held, LEAST_WINTERS, Plan, Stage, Value, fit};
+use crate::report::{FitReport, SCHEMA_VERSION, fit_files, fit_in_words, publish};
+use serde::Serialize;
+use std::path::{Path, PathBuf};
+
+#[derive(Serialize)]
+struct Done<'a> {
+    schema_version: u32,
+    program: &'static str,
+    status: &'static str,
+    title: &'a str,
+    into: String,
+    files: Vec<&'a str>,
+    parameters: &'a [Value],
+    not_identified: &'a [&'static str],
+}
+
+/// Runs the command.
+pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
+    let progress = Progress::new(shared);
+    let ready = assemble(path, shared)?;
+    mind_interrupts();
+    let target = target(&ready, shared)?;
+    may_be_replaced(&target, "fit", shared)?;
+    if !shared.quiet {
+        output::complain(&crate::scenario::unlikely_lines(&ready.unlikely));
+    }
+    let scenario = &ready.scenario;
+    let sites = ready.sites();
+    if sites.is_empty() {
+        return Err(refused(
+            &ready,
+            "observed_swe",
+            "no site",
+            "observed snow",
+            "add an [[observed_swe]] table with its file",
+            shared,
+        ));
+    }
+    let plan = Plan {
+        held: Held {
+            sites: &sites,
+            weather: &ready.record.series,
+            basin: &ready.basin,
+            station_m: scenario.weather.station_elevation_m,
+            season: &scenario.season,
+        },
+        stated: scenario.parameters(),
+        searched: scenario.fit.searched.clone(),
+        objective: scenario.fit.objective,
+        starts: scenario.fit.starts,
+        evaluations: scenario.fit.evaluations,
+        seed: scenario.seed,
+    };
+    let result = in_pool(shared, || fit(&plan, &mut Told(&progress)))?;
+    progress.ends();
+    let result = result.map_err(|end| match end {
+        FitEnd::Stopped => Failure::Interrupted,
+        FitEnd::Ledger(open) => Failure::Ours(open.to_string()),
+        FitEnd::TooFewWinters(winters) => refused(
+            &ready,
+            "observed_swe",
+            &format!("{winters} water years in use with observed snow"),
+            &format!("at least {LEAST_WINTERS}, so that halves of them can be told apart"),
+            "add years to the record or to the observed snow; `thawline check` says which are left out and why",
+            shared,
+        ),
+    })?;
+    let report = FitReport {
+        title: &scenario.title,
+        reader: ready.reader(),
+        stated: &plan.stated,
+        searched: &plan.searched,
+        objective: plan.objective,
+        starts: plan.starts,
+        evaluations: plan.evaluations,
+        result: &result,
+        origin: ready.origin("fit", path, shared),
+    };
+    let files = fit_files(&report).map_err(|error| Failure::Ours(error.to_string()))?;
+    if is_interrupted() {
+        return Err(Failure::Interrupted);
+    }
+    may_be_replaced(&target, "fit", shared)?;
+    publish(&files, &target).map_err(|error| unpublished(&error))?;
+    if shared.json {
+        return output::print_json(&Done {
+            schema_version: SCHEMA_VERSION,
+            program: "thawline",
+            status: "done",
+            title: &scenario.title,
+            into: target.display().to_string(),
+            files: files.iter().map(|(name, _)| name.as_str()).collect(),
+            parameters: &result.fitted[0].values,
+            not_identified: &result.not_identified,
+        });
+    }
+    if !shared.quiet {
+        let page = target.join("fit.html");
+        output::complain(&format!("{}page: {}\n", fit_in_words(&report), page.display()));
+    }
+    Ok(())
+}
+
+/// What a fit says as it goes.
+struct Told<'a>(&'a Progress);
+
+impl Follow for Told<'_> {
+    fn begins(&mut self, stage: Stage) {
+        self.0.stage(match stage {
+            Stage::Search => "searching for parameters on all winters and on halves of them",
+            Stage::Profiles => "looking how well the snow tells each of them",
+            Stage::Again => "searching again without those that the snow does not tell",
+        });
+    }
+
+    fn wants_stop(&self) -> bool {
+        is_interrupted()
+    }
+}
+
+fn target(ready: &Ready, shared: &Shared) -> Result<PathBuf, Failure> {
+    match (&shared.into, &ready.stem) {
+        (Some(into), _) => Ok(into.clone()),
+        (None, Some(stem)) => Ok(Path::new("output").join(format!("{stem}-fit"))),
+        (None, None) => Err(Failure::CommandLine(
+            "a scenario from standard input needs --into DIR for its results".to_owned(),
+        )),
+    }
+}
+
+fn refused(ready: &Ready, key: &str, found: &str, expected: &str, mend: &str, shared: &Shared) -> Failure {
+    let file = &ready.files[0];
+    let fault = Fault::key(key, found, expected, mend);
+    Failure::input(&[fault], &file.name, &file.text, shared.is_coloured())
+}

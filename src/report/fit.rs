@@ -1,0 +1,175 @@
+//! What a fit found: the file of its parameters, a page, a document, tables, words for a terminal.
+
+mod judged;
+mod page;
+mod parameters;
+mod tables;
+
+use super::SCHEMA_VERSION;
+use super::json::lines;
+use super::numbers::{counted, fixed, signed};
+use super::observed::observed_tables;
+use super::reader::Reader;
+use super::study::{Input, Origin};
+use super::tables::ReportFile;
+use crate::fit::{Bounded, FitResult, Fitted, Judged, Objective, Parameters, Split};
+use serde::Serialize;
+use std::fmt::Write;
+
+/// The file of fitted parameters.
+pub(super) const PARAMETERS_FILE: &str = "parameters.toml";
+
+/// A fit, and how it came about.
+pub struct FitReport<'a> {
+    /// The study's title.
+    pub title: &'a str,
+    /// Who reads it.
+    pub reader: Reader,
+    /// The scenario's parameters.
+    pub stated: &'a Parameters,
+    /// What was searched for.
+    pub searched: &'a [Bounded],
+    /// What was made as large as it can be.
+    pub objective: Objective,
+    /// Searches of each split.
+    pub starts: usize,
+    /// Sets of parameters that each search tried.
+    pub evaluations: usize,
+    /// What was found.
+    pub result: &'a FitResult,
+    /// How it is repeated, and from what.
+    pub origin: Origin,
+}
+
+#[derive(Serialize)]
+struct Document<'a> {
+    schema_version: u32,
+    program: &'static str,
+    title: &'a str,
+    conventions: &'static str,
+    objective: Objective,
+    starts: usize,
+    evaluations: usize,
+    result: &'a FitResult,
+}
+
+#[derive(Serialize)]
+struct Manifest<'a> {
+    schema_version: u32,
+    program: &'static str,
+    version: &'static str,
+    command: &'a str,
+    seed: u64,
+    inputs: &'a [Input],
+    files: Vec<&'a str>,
+}
+
+/// Every file of a fit, `run.json` the last.
+///
+/// # Errors
+/// A number that JSON cannot hold: a fault of ours.
+pub fn fit_files(report: &FitReport<'_>) -> serde_json::Result<Vec<ReportFile>> {
+    let document = lines(&Document {
+        schema_version: SCHEMA_VERSION,
+        program: "thawline",
+        title: report.title,
+        conventions: "SWE in mm as the day begins; errors are modelled less observed; NSE over all readings, KGE (2009) over those \
+                      with observed or modelled SWE above 0; skill_above_mean against the mean of the other years on the same day",
+        objective: report.objective,
+        starts: report.starts,
+        evaluations: report.evaluations,
+        result: report.result,
+    })?;
+    let mut files = vec![
+        (PARAMETERS_FILE.to_owned(), parameters::parameters_toml(report)),
+        ("fit.html".to_owned(), page::page(report)),
+        ("fit.json".to_owned(), document),
+        ("tables/fit-scores.csv".to_owned(), tables::scores(report)),
+        ("tables/fit-parameters.csv".to_owned(), tables::parameters(report)),
+        ("tables/fit-profiles.csv".to_owned(), tables::profiles(report)),
+    ];
+    files.extend(observed_tables(&report.result.compared, report.reader.units));
+    let names = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
+    let manifest = lines(&Manifest {
+        schema_version: SCHEMA_VERSION,
+        program: "thawline",
+        version: env!("CARGO_PKG_VERSION"),
+        command: &report.origin.command,
+        seed: report.origin.seed,
+        inputs: &report.origin.inputs,
+        files: names,
+    })?;
+    files.push(("run.json".to_owned(), manifest));
+    Ok(files)
+}
+
+/// The fit in a few lines: its parameters, and how it does on years that it has not seen.
+pub fn fit_in_words(report: &FitReport<'_>) -> String {
+    let result = report.result;
+    let mut text = String::new();
+    for value in &result.fitted[0].values {
+        let _ = writeln!(text, "  {} = {}", value.key, rounded(value.value));
+    }
+    if !result.not_identified.is_empty() {
+        let _ =
+            writeln!(text, "  not identified by the snow, and left: {}", result.not_identified.join(", "));
+    }
+    for sentence in of_other_years(report) {
+        let _ = writeln!(text, "{sentence}");
+    }
+    text
+}
+
+/// A sentence a site: what is lost where the climate differs.
+fn of_other_years(report: &FitReport<'_>) -> Vec<String> {
+    let fitted = &report.result.fitted;
+    let of = |split: Split| fitted.iter().find(|fitted| fitted.split == split);
+    let (Some(cold), Some(warm)) = (of(Split::Coldest), of(Split::Warmest)) else { return Vec::new() };
+    let sites = cold.on_others.iter().zip(&warm.on_own).zip(&warm.on_others);
+    sites.map(|((on_warm, warm_own), on_cold)| of_a_site(on_warm, warm_own, on_cold)).collect()
+}
+
+fn of_a_site(on_warm: &Judged, warm_own: &Judged, on_cold: &Judged) -> String {
+    let mut text = format!(
+        "{}: fitted on the coldest half of the winters, NSE in the warmest half is {}; fitted on that half itself it is {}. \
+         Fitted on the warmest half, it is {} in the coldest.",
+        on_warm.site,
+        score(on_warm.nash_sutcliffe),
+        score(warm_own.nash_sutcliffe),
+        score(on_cold.nash_sutcliffe)
+    );
+    if let Some(bias) = on_warm.peak.and_then(|peak| peak.bias_pct) {
+        let _ = write!(text, " In winters warmer than it has seen, peak SWE is off by {} %", signed(bias, 1));
+        if let Some(error) = on_warm.melt_out {
+            let _ = write!(text, ", and melt-out by {} days in mean size", fixed(error.mean_size_days, 1));
+        }
+        text.push('.');
+    }
+    text
+}
+
+/// Who has seen what: `the coldest half, judged on the warmest half`.
+fn judgements(fitted: &Fitted) -> Vec<(Split, &[Judged])> {
+    let own = (fitted.split, fitted.on_own.as_slice());
+    let others = fitted.split.others().map(|split| (split, fitted.on_others.as_slice()));
+    std::iter::once(own).chain(others).collect()
+}
+
+fn score(score: Option<f64>) -> String {
+    score.map_or("none".to_owned(), |score| fixed(score, 2))
+}
+
+/// A parameter's value as it is handed on: six decimals, far finer than the search.
+fn rounded(value: f64) -> f64 {
+    (value * 1e6).round() / 1e6
+}
+
+/// `8 winters with observed snow, 48 000 sets of parameters tried`.
+fn effort(report: &FitReport<'_>) -> String {
+    let winters = report.result.winters.iter().filter(|winter| winter.is_observed).count();
+    format!(
+        "{} with observed snow, {} of parameters tried",
+        counted(winters, "winter"),
+        counted(report.result.tried, "set")
+    )
+}

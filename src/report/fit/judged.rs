@@ -1,0 +1,38 @@
+//! Scores of a fit as a row of numbers, for page and table alike.
+
+use crate::fit::{Bias, Judged};
+
+/// Heads of the columns of a table, the units at their ends.
+pub(super) const COLUMNS: [&str; 10] = [
+    "nash_sutcliffe",
+    "kling_gupta_2009",
+    "skill_above_day_of_year_mean",
+    "peak_bias_pct",
+    "survey_bias_pct",
+    "melt_out_error_days",
+    "melt_out_size_of_error_days",
+    "survey_error_by_winter_temperature_pct_per_c",
+    "survey_error_by_winter_temperature_standard_error_pct_per_c",
+    "years",
+];
+
+/// The numbers under [`COLUMNS`].
+pub(super) fn numbers(judged: &Judged) -> [Option<f64>; 10] {
+    let bias = |bias: Option<Bias>| bias.and_then(|bias| bias.bias_pct);
+    let share = |part: fn(&crate::fit::Slope) -> f64| {
+        let (slope, survey) = judged.survey_error_by_winter_mm_per_c.as_ref().zip(judged.survey)?;
+        survey.bias_pct.map(|_| 100.0 * part(slope) / survey.observed_mm)
+    };
+    [
+        judged.nash_sutcliffe,
+        judged.kling_gupta.map(|kling_gupta| kling_gupta.efficiency),
+        judged.skill_above_mean,
+        bias(judged.peak),
+        bias(judged.survey),
+        judged.melt_out.map(|error| error.mean_days),
+        judged.melt_out.map(|error| error.mean_size_days),
+        share(|slope| slope.slope),
+        share(|slope| slope.standard_error),
+        Some(judged.years as f64),
+    ]
+}
