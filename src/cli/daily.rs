@@ -124,7 +124,12 @@ fn drawn(
 
 fn setting(ready: &Ready) -> Setting<'_> {
     let Reader { units, starts: water_year_starts } = ready.reader();
-    Setting { study_title: &ready.scenario.title, units, water_year_starts }
+    Setting {
+        study_title: &ready.scenario.title,
+        units,
+        water_year_starts,
+        is_fitted: ready.fitted.is_some(),
+    }
 }
 
 fn failure(error: DailyError) -> Failure {

@@ -147,7 +147,8 @@ fn reference_swe_mm(findings: &Findings) -> Vec<f64> {
 fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Failure> {
     let ours = |error: serde_json::Error| Failure::Ours(error.to_string());
     let Reader { units, starts: water_year_starts } = study.reader;
-    let setting = Setting { study_title: study.title, units, water_year_starts };
+    let is_fitted = study.fitted.is_some();
+    let setting = Setting { study_title: study.title, units, water_year_starts, is_fitted };
     let mut files = Vec::new();
     let mut drawn = Vec::new();
     for figure in &FIGURES {

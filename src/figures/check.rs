@@ -203,6 +203,7 @@ fn figures_without_their_measures_are_not_drawn() {
         study_title: "Alder Fork",
         units: UnitSystem::Metric,
         water_year_starts: WaterYearStart(MonthDay::new(10, 1).unwrap()),
+        is_fitted: false,
     };
     let findings = Findings { basin: Vec::new(), record: None, generator: None, ..PLAIN.findings() };
     assert!(FIGURES.iter().all(|figure| (figure.draw)(&findings, &setting).is_none()));

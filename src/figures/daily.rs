@@ -30,7 +30,7 @@ fn draw(days: &PlaceDays, apart: Option<&str>, setting: &Setting<'_>) -> Option<
     if days.years.is_empty() {
         return None;
     }
-    let words = Words::of(days, apart, setting.units);
+    let words = Words::of(days, apart, setting);
     let text = paint(days, setting, &words).ok()?;
     Some(Svg { text, alt: words.alt, caption: words.caption, title: words.title })
 }

@@ -142,6 +142,8 @@ pub struct Setting<'a> {
     pub units: UnitSystem,
     /// First day of its water years.
     pub water_year_starts: WaterYearStart,
+    /// Whether parameters of its model were fitted to observed snow.
+    pub is_fitted: bool,
 }
 
 /// A drawn figure.

@@ -36,7 +36,7 @@ fn draw(comparison: &Comparison, slug: &str, setting: &Setting<'_>) -> Option<Sv
     if drawn.is_empty() {
         return None;
     }
-    let words = Words::of(comparison, drawn.len(), setting.units);
+    let words = Words::of(comparison, drawn.len(), setting);
     let text = paint(comparison.kind, drawn, slug, setting, &words).ok()?;
     Some(Svg { text, alt: words.alt, caption: words.caption, title: words.title })
 }

@@ -7,6 +7,7 @@ mod corpus;
 mod data_faults;
 mod drawn_days;
 mod drawn_weather;
+mod fit;
 mod generator_sheet;
 mod gradients;
 mod ground;

@@ -88,7 +88,7 @@ impl Made {
 
 fn draw(comparisons: &[Comparison], units: UnitSystem) -> Vec<(String, Svg)> {
     let water_year_starts = WaterYearStart(MonthDay::new(10, 1).unwrap());
-    of_sites(comparisons, &Setting { study_title: "Alder Fork", units, water_year_starts })
+    of_sites(comparisons, &Setting { study_title: "Alder Fork", units, water_year_starts, is_fitted: false })
 }
 
 #[test]

@@ -73,7 +73,7 @@ impl Made {
 
     fn draw_in(self, units: UnitSystem) -> Svg {
         let water_year_starts = WaterYearStart(MonthDay::new(self.month, 1).unwrap());
-        let setting = Setting { study_title: "Alder Fork", units, water_year_starts };
+        let setting = Setting { study_title: "Alder Fork", units, water_year_starts, is_fitted: false };
         of_days(&self.days(), None, &setting).remove(0).1
     }
 
@@ -187,7 +187,12 @@ fn observed_snow_is_named_or_missed() {
         pair.observed_mm = None;
     }
     let starts = WaterYearStart(MonthDay::new(10, 1).unwrap());
-    let setting = Setting { study_title: "Alder Fork", units: UnitSystem::Metric, water_year_starts: starts };
+    let setting = Setting {
+        study_title: "Alder Fork",
+        units: UnitSystem::Metric,
+        water_year_starts: starts,
+        is_fitted: false,
+    };
     let unread = of_days(&days, None, &setting).remove(0).1;
     assert!(unread.caption.contains("There is no reading of these days."), "{}", unread.caption);
     assert!(of_days(&PlaceDays { years: Vec::new(), ..days }, None, &setting).is_empty());

@@ -101,7 +101,7 @@ impl Made {
         let findings =
             Findings { record: Some(self.findings(&[0.0, 1.0], 0)), ..super::studies::PLAIN.findings() };
         let water_year_starts = WaterYearStart(MonthDay::new(self.month, 1).unwrap());
-        let setting = Setting { study_title: "Alder Fork", units, water_year_starts };
+        let setting = Setting { study_title: "Alder Fork", units, water_year_starts, is_fitted: false };
         [record_years::FIGURE, record_precipitation::FIGURE]
             .map(|figure| (figure.draw)(&findings, &setting).unwrap())
     }

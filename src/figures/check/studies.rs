@@ -191,6 +191,7 @@ impl Study<'_> {
             study_title: title,
             units,
             water_year_starts: WaterYearStart(MonthDay::new(month, 1).unwrap()),
+            is_fitted: false,
         };
         let findings = self.findings();
         let draw = |figure: &Figure| (figure.draw)(&findings, &setting);

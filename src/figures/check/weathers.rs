@@ -85,7 +85,7 @@ impl Made {
     fn draw_of(&self, sheet: GeneratorSheet, units: UnitSystem) -> Svg {
         let findings = Findings { generator: Some(sheet), ..super::studies::PLAIN.findings() };
         let water_year_starts = WaterYearStart(MonthDay::new(self.month, 1).unwrap());
-        let setting = Setting { study_title: "Alder Fork", units, water_year_starts };
+        let setting = Setting { study_title: "Alder Fork", units, water_year_starts, is_fitted: false };
         (generator_sheet::FIGURE.draw)(&findings, &setting).unwrap()
     }
 }

@@ -1,5 +1,6 @@
 //! What the figure says.
 
+use super::super::Setting;
 use super::super::labels::{band, elevation, is_nothing, size_and_unit};
 use crate::calendar::{MONTHS, date_of};
 use crate::fit::{ObservedAt, Place, PlaceDays, PlaceYear};
@@ -19,9 +20,10 @@ pub(super) struct Words {
 }
 
 impl Words {
-    pub fn of(days: &PlaceDays, apart: Option<&str>, units: UnitSystem) -> Self {
+    pub fn of(days: &PlaceDays, apart: Option<&str>, setting: &Setting<'_>) -> Self {
+        let units = setting.units;
         let title = title(days, apart, units);
-        let sample = format!("The record as observed, without any warming. {}", observed(days, units));
+        let sample = format!("The record as observed, without any warming. {}", observed(days, setting));
         let observed_line = match days.observed.as_ref().map(|observed| observed.kind) {
             None => "",
             Some(Kind::Pillow) => "; dark line: observed, broken where there is no reading",
@@ -84,7 +86,9 @@ fn title(days: &PlaceDays, apart: Option<&str>, units: UnitSystem) -> String {
 }
 
 /// Whose observed snow is drawn, or why none is.
-fn observed(days: &PlaceDays, units: UnitSystem) -> String {
+fn observed(days: &PlaceDays, setting: &Setting<'_>) -> String {
+    let (units, is_fitted) = (setting.units, setting.is_fitted);
+    let parameters = if is_fitted { "with fitted parameters" } else { "not fitted to it" };
     match (&days.place, &days.observed) {
         (Place::Basin, _) => {
             "The mean of all bands, weighted by area; snow is observed at sites, never of a whole basin."
@@ -96,7 +100,7 @@ fn observed(days: &PlaceDays, units: UnitSystem) -> String {
         (Place::Site { .. }, None) => String::new(),
         (Place::Site { .. }, Some(ObservedAt { kind, .. })) => {
             format!(
-                "The model at the elevation of the site, a {}, not fitted to it.{}",
+                "The model at the elevation of the site, a {}, {parameters}.{}",
                 kind.words(),
                 unread(days)
             )

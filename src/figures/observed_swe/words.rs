@@ -1,5 +1,6 @@
 //! What the figure says.
 
+use super::super::Setting;
 use super::super::labels::{days_in_words, grouped, percent_size, size_and_unit};
 use crate::fit::{Bias, ComparedYear, Comparison};
 use crate::observed::Kind;
@@ -17,7 +18,9 @@ pub(super) struct Words {
 
 impl Words {
     /// `drawn` of the comparison's years, the last, have a panel.
-    pub fn of(comparison: &Comparison, drawn: usize, units: UnitSystem) -> Self {
+    pub fn of(comparison: &Comparison, drawn: usize, setting: &Setting<'_>) -> Self {
+        let units = setting.units;
+        let parameters = if setting.is_fitted { "has fitted parameters" } else { "is not fitted to them" };
         let title = finding(comparison, units);
         let unit = units.elevation();
         let elevation = format!("{} {}", grouped(unit.of(comparison.elevation_m).max(0.0), 0), unit.word);
@@ -28,7 +31,7 @@ impl Words {
             String::new()
         };
         let sample = format!(
-            "{} of the {} in {}; the model at the site's {elevation} is not fitted to them",
+            "{} of the {} in {}; the model at the site's {elevation} {parameters}",
             counted(comparison.readings_compared, "reading"),
             comparison.kind.words(),
             counted(years, "water year"),

@@ -1,0 +1,134 @@
+//! `fit`: fitted, told, handed on by one line, and refused where it cannot be.
+
+use super::basin::Basin;
+use serde_json::Value;
+
+const DEMO_SCENARIO: &str = "scenarios/alder-fork.toml";
+/// Small enough for a test: what is tested hangs on no more.
+const SMALL: &str = r#"
+[fit]
+parameters = ["snow.degree_day_factor_mm_per_c_day.highest", "snow.melt_base_c"]
+bounds = { snow.melt_base_c = [-1, 3] }
+starts = 2
+evaluations = 10
+"#;
+
+const BOUNDS: &str = r"
+[fit.bounds]
+snow.melt_base_c = [3, 1]
+snow.melt_base = [0, 1]
+snow.rain_snow.mixed_range_c = [1, 2]
+";
+
+/// The demo basin with its snow course, written by the program itself.
+fn demo() -> Basin {
+    let basin = Basin::new();
+    let ended = basin.run("start .");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    basin.write("mine.toml", &basin.read(DEMO_SCENARIO).replace("../demo-data", "demo-data"));
+    basin
+}
+
+fn json(basin: &Basin, file: &str) -> Value {
+    serde_json::from_str(&basin.read(file)).unwrap()
+}
+
+/// Identity: a scenario that names the file of a fit has the efficiency that the fit says of all years; and its seed gives the same bytes on
+/// one thread and on two.
+#[test]
+fn what_was_fitted_is_handed_on_by_one_line() {
+    let basin = demo();
+    let plain = basin.read("mine.toml");
+    basin.write("mine.toml", &(plain.clone() + SMALL));
+    let ended = basin.run("fit mine.toml --threads 2");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    assert!(ended.stderr.contains("fitted on the coldest half of the winters"), "{}", ended.stderr);
+    let again = basin.run("fit mine.toml --threads 1 --quiet --into again");
+    assert_eq!((again.status, again.stderr.as_str()), (0, ""));
+    for file in ["parameters.toml", "fit.json", "tables/fit-scores.csv"] {
+        assert_eq!(
+            basin.read(&format!("output/mine-fit/{file}")),
+            basin.read(&format!("again/{file}")),
+            "{file}"
+        );
+    }
+
+    let of_all = &json(&basin, "again/fit.json")["result"]["fitted"][0]["on_own"][0];
+    let with = plain.replacen("[snow]\n", "[snow]\nfitted = \"again/parameters.toml\"\n", 1);
+    basin.write("mine.toml", &with);
+    let ended = basin.run("daily mine.toml --into days");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    assert!(ended.stderr.contains("parameters are those of again/parameters.toml"), "{}", ended.stderr);
+    let compared = &json(&basin, "days/comparison.json")["comparisons"][0];
+    let [fitted, read] = [of_all, compared].map(|scores| scores["nash_sutcliffe"].as_f64().unwrap());
+    // The file has six decimals.
+    assert!((fitted - read).abs() < 1e-5, "{fitted} and {read}");
+    let check = basin.run("check mine.toml");
+    assert!(check.stdout.contains("Fitted to observed snow"), "{}", check.stdout);
+    let roles = json(&basin, "days/run.json")["inputs"].to_string();
+    assert!(roles.contains("\"fitted\""), "{roles}");
+}
+
+/// What the scenario states itself goes before the file.
+#[test]
+fn what_is_stated_goes_before() {
+    let basin = demo();
+    basin.write("p.toml", "snow.melt_base_c = 3.5\nweather.gauge_multiplier.snow = 1.9\n");
+    basin.write(
+        "mine.toml",
+        &basin.read("mine.toml").replacen("[snow]\n", "[snow]\nfitted = \"p.toml\"\n", 1),
+    );
+    let ended = basin.run("check mine.toml --json");
+    let found: Value = serde_json::from_str(&ended.stdout).unwrap();
+    assert_eq!(found["snow"]["melt_base_c"], 3.5, "{}", ended.stderr);
+    assert_eq!(found["gauge_multiplier"]["snow"], 1.1);
+    assert_eq!(found["fitted"]["left"][0], "weather.gauge_multiplier.snow");
+}
+
+/// Every fault of the table at once, each with how to mend it.
+#[test]
+fn faults_of_the_table() {
+    let basin = demo();
+    let faulty = r#"
+[fit]
+parameters = ["snow.melt_bas_c", "snow.radiation.factor_mm_per_c_day", "snow.refreeze_fraction"]
+starts = 0
+objective = "sesaon"
+"#;
+    basin.write("mine.toml", &(basin.read("mine.toml") + faulty));
+    let ended = basin.run("check mine.toml");
+    assert_eq!(ended.status, 3);
+    for expected in [
+        "write \"snow.melt_base_c\"",
+        "rules and options in use",
+        "a whole number from 1 to 64",
+        "did you mean \"season\"?",
+    ] {
+        assert!(ended.stderr.contains(expected), "{expected}: {}", ended.stderr);
+    }
+    let basin = demo();
+    basin.write("mine.toml", &(basin.read("mine.toml") + BOUNDS));
+    let ended = basin.run("check mine.toml");
+    assert_eq!(ended.status, 3);
+    for expected in ["a lower and a higher number", "'melt_base_c'?", "which is not fitted"] {
+        assert!(ended.stderr.contains(expected), "{expected}: {}", ended.stderr);
+    }
+}
+
+/// A file of fitted parameters that is none, and a fit with nothing to be held against.
+#[test]
+fn what_cannot_be_fitted_or_read_is_refused() {
+    let basin = demo();
+    let plain = basin.read("mine.toml");
+    basin.write("mine.toml", &plain.replacen("[snow]\n", "[snow]\nfitted = \"p.toml\"\n", 1));
+    let ended = basin.run("check mine.toml");
+    assert!(ended.status == 3 && ended.stderr.contains("there is no such file"), "{}", ended.stderr);
+    basin.write("p.toml", "snow.melt_base_c = \"warm\"\n");
+    let ended = basin.run("check mine.toml");
+    assert!(ended.status == 3 && ended.stderr.contains("p.toml:1:20"), "{}", ended.stderr);
+
+    let ended = basin.run("fit scenario.toml");
+    assert_eq!(ended.status, 3);
+    assert!(ended.stderr.contains("[[observed_swe]]"), "{}", ended.stderr);
+    assert!(!basin.path().join("output").join("scenario-fit").exists());
+}
