@@ -1,7 +1,8 @@
 //! How good a trial is: one number from its sums over the years of a split.
 //!
-//! The default is a Kling-Gupta efficiency over the days on which snow was observed or modelled, less the relative errors of
-//! mean peak and mean survey SWE and the error of melt-out: the signature of a season beside its days.
+//! The default is the Nash-Sutcliffe efficiency: it is smooth, and over eight mountain stations fits by it kept more skill, and
+//! lost less of the peak, in winters that they had not seen. The other is a Kling-Gupta efficiency over the days on which snow
+//! was observed or modelled, less the relative errors of mean peak and mean survey SWE and the error of melt-out.
 
 use super::sums::Sums;
 

@@ -21,7 +21,7 @@ pub struct FitTyped {
 const STARTS: u64 = 8;
 const EVALUATIONS: u64 = 1000;
 const OBJECTIVES: [(&str, Objective); 2] =
-    [("season", Objective::Season), ("nash-sutcliffe", Objective::NashSutcliffe)];
+    [("nash-sutcliffe", Objective::NashSutcliffe), ("season", Objective::Season)];
 
 impl Default for FitTyped {
     fn default() -> Self {
@@ -29,7 +29,7 @@ impl Default for FitTyped {
             searched: usual(),
             starts: STARTS as usize,
             evaluations: EVALUATIONS as usize,
-            objective: Objective::Season,
+            objective: Objective::NashSutcliffe,
         }
     }
 }
@@ -47,7 +47,7 @@ pub(super) fn read(mut section: Section<'_>, of: Option<&Parameters>) -> Option<
     }
     let starts = section.whole_or("starts", STARTS, 1..=64) as usize;
     let evaluations = section.whole_or("evaluations", EVALUATIONS, 10..=100_000) as usize;
-    let objective = section.choice_or("objective", &OBJECTIVES, "season");
+    let objective = section.choice_or("objective", &OBJECTIVES, "nash-sutcliffe");
     section.finish();
     Some(FitTyped { searched: searched?, starts, evaluations, objective: objective? })
 }
