@@ -107,7 +107,8 @@ pub struct FitResult {
     pub fitted: Vec<Fitted>,
     /// The scenario's parameters judged on the years of each split, a site each.
     pub unfitted: Vec<(Split, Vec<Judged>)>,
-    /// The objective over the bounds of each parameter, about the first fit on all years.
+    /// The objective over the bounds of each parameter, about a fit on all years: those that are identified, then those that
+    /// are not, each as it was when it went back to the scenario's value.
     pub profiles: Vec<Profile>,
     /// Keys that the snow does not identify: they stay at the scenario's values.
     pub not_identified: Vec<&'static str>,
@@ -139,12 +140,9 @@ pub fn fit(plan: &Plan<'_>, follow: &mut dyn Follow) -> Result<FitResult, FitEnd
     run.follow.begins(Stage::Search);
     let mut found = run.search(&space)?;
     run.follow.begins(Stage::Profiles);
-    let profiles = profiles(&space, &found[0].best, |points| {
-        run.values(&space, points.iter().map(|point| (0, point.as_slice())))
-    })?;
-    let flat: Vec<usize> = (0..profiles.len()).filter(|at| !profiles[*at].is_identified).collect();
-    if !flat.is_empty() && flat.len() < profiles.len() {
-        space = space.without(&flat);
+    let told = run.told(space.clone(), found[0].best.clone())?;
+    if !told.not_identified.is_empty() {
+        space = told.space.clone();
         run.follow.begins(Stage::Again);
         found = run.search(&space)?;
     }
@@ -171,9 +169,9 @@ pub fn fit(plan: &Plan<'_>, follow: &mut dyn Follow) -> Result<FitResult, FitEnd
     let unfitted = Split::EACH.into_iter().zip(&splits).map(|(split, is_judged)| {
         (split, as_stated.iter().map(|comparison| Judged::of(comparison, &winters, is_judged)).collect())
     });
-    let not_identified = flat.iter().map(|at| profiles[*at].key).collect();
     let unfitted = unfitted.collect();
     let compared = held.compared(&fitted[0].parameters)?;
+    let Told { profiles, not_identified, .. } = told;
     Ok(FitResult { winters, fitted, unfitted, profiles, not_identified, tried, compared })
 }
 
@@ -193,6 +191,14 @@ fn winters(plan: &Plan<'_>) -> Result<Vec<Winter>, FitEnd> {
         .collect();
     let observed = winters.iter().filter(|winter| winter.is_observed).count();
     if observed < LEAST_WINTERS { Err(FitEnd::TooFewWinters(observed)) } else { Ok(winters) }
+}
+
+/// What the snow tells of the parameters.
+struct Told {
+    /// Those that are identified.
+    space: Space,
+    profiles: Vec<Profile>,
+    not_identified: Vec<&'static str>,
 }
 
 /// What the searches of one split found.
@@ -234,6 +240,33 @@ impl Run<'_, '_> {
         })?;
         let by_start = of_all.chunks(starts).map(|found| found.iter().map(|found| found.value).collect());
         Ok(refined.into_iter().zip(by_start).map(|(best, by_start)| OfSplit { best, by_start }).collect())
+    }
+
+    /// Profiles about the best of all years. Parameters that make up for each other are flat each by itself, though not
+    /// together: so the flattest alone goes back to the scenario's value, the others are refined, and all are asked again.
+    fn told(&mut self, mut space: Space, mut best: Found) -> Result<Told, FitEnd> {
+        let (mut gone, mut not_identified) = (Vec::new(), Vec::new());
+        loop {
+            let mut profiles = profiles(&space, &best, |points| {
+                self.values(&space, points.iter().map(|point| (0, point.as_slice())))
+            })?;
+            let falls = profiles.iter().enumerate().filter(|(_, profile)| !profile.is_identified);
+            let flattest = falls.min_by(|(_, a), (_, b)| a.fall.total_cmp(&b.fall)).map(|(at, _)| at);
+            let Some(at) = flattest.filter(|_| profiles.len() > 1) else {
+                profiles.extend(gone);
+                return Ok(Told { space, profiles, not_identified });
+            };
+            not_identified.push(profiles[at].key);
+            gone.push(profiles.swap_remove(at));
+            space = space.without(at);
+            best.point.remove(at);
+            best.value = self.values(&space, std::iter::once((0, best.point.as_slice())))?[0];
+            let mut refined = [best];
+            refine(&mut refined, |asked: &[Asked]| {
+                self.values(&space, asked.iter().map(|asked| (0, asked.point.as_slice())))
+            })?;
+            [best] = refined;
+        }
     }
 
     /// The objective of points, each with its split.

@@ -49,10 +49,10 @@ impl Space {
         &self.searched
     }
 
-    /// The same without some of the parameters, by their places: they stay at the scenario's values.
-    pub fn without(&self, places: &[usize]) -> Self {
-        let stays = self.searched.iter().enumerate().filter(|(at, _)| !places.contains(at));
-        Self { searched: stays.map(|(_, bounded)| *bounded).collect(), stated: self.stated.clone() }
+    /// The same without the parameter in this place: it stays at the scenario's value.
+    pub fn without(mut self, place: usize) -> Self {
+        self.searched.remove(place);
+        self
     }
 
     /// The parameters at a point.

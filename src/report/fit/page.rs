@@ -38,8 +38,8 @@ pub(super) fn page(report: &FitReport<'_>) -> Vec<u8> {
             (counted(report.evaluations, "set")) " a split, the first at the scenario's own values, and refined by a compass search. A profile holds one parameter at nine values \
              over its bounds and refines the others there; it falls by its highest less its lowest objective. "
             @if result.not_identified.is_empty() { "All parameters are identified: each profile falls by more than 0.01." } @else {
-                "Where it falls by 0.01 or less the snow does not identify the parameter: it stays at the scenario's value, and the others were \
-                 searched for again."
+                "Where it falls by 0.01 or less the snow does not identify the parameter. The flattest goes back to the scenario's value, then \
+                 the rest are asked again; what was left was searched for again on every split."
             }
         }
         h2 { "Terms" }
