@@ -142,7 +142,8 @@ fn titles_say_peak_and_place() {
 fn titles_tell_bands_of_one_range_apart() {
     let days = Made { place: "band", years: 1, ..PLAIN }.days();
     let water_year_starts = WaterYearStart(MonthDay::new(10, 1).unwrap());
-    let setting = Setting { study_title: "Alder Fork", units: UnitSystem::Metric, water_year_starts };
+    let setting =
+        Setting { study_title: "Alder Fork", units: UnitSystem::Metric, water_year_starts, is_fitted: false };
     let ground = "facing 180°, slope 25.5°, 45.5 % canopy, no accumulation CV of its own";
     let svg = of_days(&days, Some(ground), &setting).remove(0).1;
     assert_texts_apart(ground, &svg.text);
