@@ -3,11 +3,14 @@
 use super::cases;
 use super::scenario::{Scenario, scenarios};
 use super::with_options::scenarios_with_options;
+use proptest::collection::vec;
 use proptest::prelude::*;
+use thawline::basin::Ground;
 use thawline::fault::Unlikely;
+use thawline::perturb::MonthlyChange;
 use thawline::snow::{
-    ColdContent, DegreeRule, Engine, OpenLedger, Patchiness, Path, Radiation, RawSnow, SnowOptions,
-    SnowParams, Sublimation, YearBlock,
+    ColdContent, DegreeRule, Engine, LaneSpec, Lanes, OpenLedger, Patchiness, Path, Radiation, RawSnow,
+    SnowOptions, SnowParams, Sublimation, YearBlock,
 };
 
 /// Any scenario under eleven levels: more than one row of basin means.
@@ -66,6 +69,35 @@ proptest! {
             let tmax = factor * change.tmax_c[month] + gradient.tmax_c_per_km[month] * rise_km;
             let expected = series.mean_c[first] + (tmin + tmax) / 2.0;
             prop_assert!((detail.mean_c[lanes.lane(level, band)] - expected).abs() < 1e-9);
+        }
+    }
+
+    /// Groups that are no levels of one basin mix by shares of their own, beyond the first row of means, too. 1e-12 of the sum.
+    #[test]
+    fn groups_mix_by_their_own_shares(scenario in scenarios(), shares in vec(vec(0.0..1.0, 2..4), 9..20)) {
+        let change = MonthlyChange::NONE;
+        let spec = |share: &f64| LaneSpec {
+            basin: &scenario.basin,
+            station_m: scenario.station_m,
+            elevation_m: scenario.station_m + 1000.0 * share,
+            ground: Ground::default(),
+            change: &change,
+            warming_factor: 1.0,
+            snow: &scenario.snow,
+            share: *share,
+        };
+        let groups: Vec<Vec<LaneSpec<'_>>> =
+            shares.iter().map(|of_group| of_group.iter().map(spec).collect()).collect();
+        let lanes = Lanes::new(&groups);
+        for block in Scenario::run(&lanes, &scenario.climate.series(), Path::Widest) {
+            for row in (0..block.days).map(|day| block.row(&block.swe_mm, day)) {
+                for (group, of_group) in shares.iter().enumerate() {
+                    let places = of_group.iter().enumerate();
+                    let sum: f64 = places.map(|(place, share)| share * row[lanes.column(group, place)]).sum();
+                    let near = |mean: f64| (mean - sum).abs() <= 1e-12 * sum.abs().max(1e-9);
+                    prop_assert!(near(row[block.mixes_at + group]) && near(lanes.mix(group, row)));
+                }
+            }
         }
     }
 
