@@ -130,7 +130,7 @@ fn run_year<const IS_PLAIN: bool>(
                 wet_bulb_row(&mut state.wet_bulb, &state.mean, &lanes.pressure_kpa, humidity_pct);
             }
             let State { input, mean, wet_bulb, precipitation_factor, .. } = &mut *state;
-            let mut wet_day = WetDay {
+            let today = WetDay {
                 precipitation_mm,
                 factor,
                 told_by: if has_wet_bulb { &*wet_bulb } else { &*mean },
@@ -140,7 +140,7 @@ fn run_year<const IS_PLAIN: bool>(
                     into: precipitation_factor,
                 }),
             };
-            let (fallen, today) = (&mut fallen, &mut wet_day);
+            let fallen = &mut fallen;
             match lanes.phase {
                 PhaseRule::Linear { .. } => split(fallen, input, lanes, today, linear_snow_fraction),
                 PhaseRule::Step { .. } => {
@@ -287,20 +287,20 @@ fn split(
     fallen: &mut Fallen<'_>,
     input: &mut [f64],
     lanes: &Lanes,
-    today: &mut WetDay<'_>,
+    today: WetDay<'_>,
     snow_fraction: impl Fn(f64, f64, f64) -> f64,
 ) {
     let Fallen { rain, snow } = fallen;
     let (warm, per_c) = (&lanes.phase_warm_c, &lanes.phase_per_c);
     let WetDay { precipitation_mm, factor, told_by, catch } = today;
     let factor = match catch {
-        None => *factor,
+        None => factor,
         Some(CatchRow { catch, told_by_c, into }) => {
-            catch_row(into, factor, &catch.rain, &catch.snow, warm, per_c, *told_by_c, &snow_fraction);
-            &**into
+            catch_row(into, factor, &catch.rain, &catch.snow, warm, per_c, told_by_c, &snow_fraction);
+            into
         }
     };
-    split_row(snow, rain, input, told_by, warm, per_c, factor, *precipitation_mm, snow_fraction);
+    split_row(snow, rain, input, told_by, warm, per_c, factor, precipitation_mm, snow_fraction);
 }
 
 #[inline(always)]
