@@ -5,6 +5,10 @@ use super::reader::Reader;
 use crate::perturb::Warming;
 use crate::snow::SnowOptions;
 
+/// What it is for and what not: the first caution of every page.
+pub(super) const PLANNING_AID: &str = "A planning aid. Not for flood forecasting, flood design, the operation or the safety of \
+                                       dams: local codes, water-control manuals and licensed practice rule.";
+
 /// Cautions in a reader's units, in order of weight.
 pub(super) fn cautions(reader: Reader, warming: &Warming, options: &SnowOptions) -> [String; 9] {
     let unit = reader.units.temperature();
@@ -48,8 +52,7 @@ pub(super) fn cautions(reader: Reader, warming: &Warming, options: &SnowOptions)
         ),
     };
     [
-    "A planning aid. Not for flood forecasting, flood design, the operation or the safety of dams: local codes, \
-     water-control manuals and licensed practice rule.",
+    PLANNING_AID,
     "What if, not forecast: no warming level has a date or a likelihood here.",
     "The spread holds precipitation's chance and the stated assumptions only. True uncertainty is wider.",
     "Degree-day factors describe melt in the climate they come from. Melt may slow as it moves earlier into the year, \

@@ -53,6 +53,9 @@ fn what_was_fitted_is_handed_on_by_one_line() {
         );
     }
 
+    let page = basin.read("again/fit.html");
+    assert!(page.contains("A planning aid. Not for flood forecasting"), "the page carries the cautions");
+
     let of_all = &json(&basin, "again/fit.json")["result"]["fitted"][0]["on_own"][0];
     let with = plain.replacen("[snow]\n", "[snow]\nfitted = \"again/parameters.toml\"\n", 1);
     basin.write("mine.toml", &with);

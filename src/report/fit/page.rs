@@ -1,5 +1,6 @@
 //! `fit.html`: what was fitted, and whether it may be trusted in winters that it has not seen; words first.
 
+use super::super::cautions::PLANNING_AID;
 use super::super::numbers::{DASH, counted, fixed, signed};
 use super::super::page;
 use super::judged::numbers;
@@ -41,6 +42,11 @@ pub(super) fn page(report: &FitReport<'_>) -> Vec<u8> {
                 "Where it falls by 0.01 or less the snow does not identify the parameter. The flattest goes back to the scenario's value, then \
                  the rest are asked again; what was left was searched for again on every split."
             }
+        }
+        h2 { "Cautions" }
+        ul {
+            li { (PLANNING_AID) }
+            li { "What is fitted belongs to the climate that it was fitted to, and to the places where the snow was observed." }
         }
         h2 { "Terms" }
         dl {
