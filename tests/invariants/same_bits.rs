@@ -30,6 +30,22 @@ fn bits(block: &YearBlock) -> Vec<u64> {
     values.into_iter().map(f64::to_bits).collect()
 }
 
+/// Whether a run without detail is, to the bit, what the run with it is beside the detail.
+fn is_the_same_without_detail(scenario: &Scenario) -> bool {
+    let series = scenario.climate.series();
+    let lanes = scenario.lanes(&scenario.changes());
+    let with = Scenario::run(&lanes, &series, Path::Widest);
+    let mut engine = Engine::new(&lanes, false).with_cover();
+    series.years.iter().zip(with).all(|(year, mut expected)| {
+        if !year.follows {
+            engine.restart();
+        }
+        let block = engine.year(series.view(year)).expect("the ledger is closed");
+        expected.detail = None;
+        bits(block) == bits(&expected)
+    })
+}
+
 proptest! {
     #![proptest_config(cases(48))]
 
@@ -83,18 +99,7 @@ proptest! {
     /// Asking for detail changes nothing of what is there without it.
     #[test]
     fn detail_does_not_show(scenario in prop_oneof![scenarios(), scenarios_with_options()]) {
-        let series = scenario.climate.series();
-        let lanes = scenario.lanes(&scenario.changes());
-        let with = Scenario::run(&lanes, &series, Path::Widest);
-        let mut engine = Engine::new(&lanes, false).with_cover();
-        for (year, mut expected) in series.years.iter().zip(with) {
-            if !year.follows {
-                engine.restart();
-            }
-            let block = engine.year(series.view(year)).expect("the ledger is closed");
-            expected.detail = None;
-            prop_assert!(bits(block) == bits(&expected));
-        }
+        prop_assert!(is_the_same_without_detail(&scenario));
     }
 
     /// The same with each option alone: the plain form of a year is run only where there is none of them.
@@ -114,18 +119,7 @@ proptest! {
         ] {
             let mut scenario = scenario.clone();
             scenario.snow.options = options;
-            let series = scenario.climate.series();
-            let lanes = scenario.lanes(&scenario.changes());
-            let with = Scenario::run(&lanes, &series, Path::Widest);
-            let mut engine = Engine::new(&lanes, false).with_cover();
-            for (year, mut expected) in series.years.iter().zip(with) {
-                if !year.follows {
-                    engine.restart();
-                }
-                let block = engine.year(series.view(year)).expect("the ledger is closed");
-                expected.detail = None;
-                prop_assert!(bits(block) == bits(&expected), "{options:?}");
-            }
+            prop_assert!(is_the_same_without_detail(&scenario), "{options:?}");
         }
     }
 
