@@ -1,7 +1,7 @@
 //! Break-even precipitation by root finding on runs, and how wet periods have been.
 
-use super::assemble::Ready;
 use super::level_groups::LevelGroups;
+use super::ready::Ready;
 use crate::baseline::Seasons as SeasonsOf;
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, Watch, run_records};
 use crate::findings::{BreakEven, BreakEvenLevel, Reached, Root, break_even_pct, quantile, sorted};

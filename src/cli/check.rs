@@ -1,12 +1,13 @@
 //! `thawline check`: reads everything a study would use and says what it found.
 
 use super::arguments::Shared;
-use super::assemble::{Ready, assemble};
+use super::assemble::assemble;
 use super::failure::Failure;
 use super::generator_sheet::{generator_sheet, realizations_of_the_sheet};
 use super::output;
 use super::pool::in_pool;
 use super::progress::{Progress, mind_interrupts};
+use super::ready::Ready;
 use super::runs::halted;
 use crate::baseline::Seasons;
 use crate::ensemble::Watch;

@@ -5,10 +5,11 @@ mod picture;
 pub(super) use picture::{Asked, WaterYears};
 
 use super::arguments::Shared;
-use super::assemble::{Ready, assemble};
+use super::assemble::assemble;
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::progress::{is_interrupted, mind_interrupts};
+use super::ready::Ready;
 use crate::figures::{Setting, of_days, of_sites};
 use crate::fit::Comparison;
 use crate::perturb::MonthlyChange;

@@ -1,11 +1,12 @@
 //! `thawline fit`: parameters that bring the model nearest to observed snow, and how it does on winters that it has not seen.
 
 use super::arguments::Shared;
-use super::assemble::{Ready, assemble};
+use super::assemble::assemble;
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::pool::in_pool;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
+use super::ready::Ready;
 use crate::fault::Fault;
 use crate::fit::{FitEnd, Follow, Held, LEAST_WINTERS, Plan, Stage, Value, fit};
 use crate::report::{FitReport, SCHEMA_VERSION, fit_files, fit_in_words, publish};

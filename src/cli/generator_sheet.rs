@@ -1,6 +1,6 @@
 //! The weather that a study would make, held against the record that it is made from.
 
-use super::assemble::Ready;
+use super::ready::Ready;
 use crate::ensemble::{Halt, SurveySwe, Watch};
 use crate::findings::{GeneratorSheet, REALIZATIONS_OF_THE_SHEET, SheetQuestions};
 use crate::weather::Series;

@@ -1,6 +1,6 @@
 //! Levels in groups that share their weather: all of them, unless warming changes the wet days. Then each is its own.
 
-use super::assemble::Ready;
+use super::ready::Ready;
 use crate::perturb::{Generator, Intensity, MeanChange, MonthlyChange, WetDayChange};
 use crate::snow::Lanes;
 

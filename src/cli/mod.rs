@@ -16,6 +16,7 @@ mod output;
 mod own_years;
 mod pool;
 mod progress;
+mod ready;
 mod runs;
 mod start;
 mod study;

@@ -1,7 +1,7 @@
 //! The record's own years under every level of a study, and what they say.
 
-use super::assemble::Ready;
 use super::failure::Failure;
+use super::ready::Ready;
 use crate::ensemble::{RecordRun, RecordYear};
 use crate::findings::{RecordFindings, RecordQuestions};
 use crate::season::Measures;

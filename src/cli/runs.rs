@@ -1,11 +1,11 @@
 //! The runs of a study, one after another, and what they answer.
 
-use super::assemble::Ready;
 use super::break_even::break_even;
 use super::failure::Failure;
 use super::generator_sheet::{generator_sheet, realizations_of_the_sheet};
 use super::level_groups::LevelGroups;
 use super::progress::Progress;
+use super::ready::Ready;
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
     Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit, Runs,

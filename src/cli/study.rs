@@ -1,12 +1,13 @@
 //! `thawline study`: the main job, from a scenario to a published briefing.
 
 use super::arguments::Shared;
-use super::assemble::{Ready, assemble};
+use super::assemble::assemble;
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::own_years::own_years;
 use super::pool::in_pool;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
+use super::ready::Ready;
 use super::runs;
 use crate::ensemble::RecordYear;
 use crate::fault::Fault;

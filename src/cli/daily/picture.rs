@@ -1,7 +1,7 @@
 //! What `--draw-years` and `--draw-band` ask for: some water years of one place, to be drawn.
 
-use super::super::assemble::{Ready, quoted};
 use super::super::failure::Failure;
+use super::super::ready::{Ready, quoted};
 use crate::basin::told_apart;
 use crate::figures::MOST_YEARS_OF_DAYS;
 use crate::fit::{Model, ObservedAt, Place, PlaceDays, Site, place_years, site_lanes};
