@@ -77,6 +77,13 @@ pub struct Judged {
 }
 
 impl Judged {
+    /// Slope of the error of survey SWE on the winter's temperature, and its standard error, percent of mean observed survey
+    /// SWE per degC; none without a slope, and where that mean is below 10 mm.
+    pub fn survey_error_by_winter_pct_per_c(&self) -> Option<[f64; 2]> {
+        let (slope, survey) = self.survey_error_by_winter_mm_per_c.zip(self.survey)?;
+        survey.bias_pct.map(|_| [slope.slope, slope.standard_error].map(|mm| 100.0 * mm / survey.observed_mm))
+    }
+
     /// A site's years that are judged.
     pub(super) fn of(comparison: &Comparison, winters: &[Winter], is_judged: &[bool]) -> Self {
         let judged: Vec<&Winter> =

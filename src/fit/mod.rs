@@ -9,6 +9,7 @@ mod held_against;
 #[cfg(test)]
 mod invented;
 mod judged;
+mod not_seen;
 mod objective;
 mod parameter;
 mod place;
@@ -26,10 +27,11 @@ mod year;
 
 pub use comparison::{Bias, Comparison, DateError, SurveyBias};
 pub use judged::{Held, Judged};
+pub use not_seen::not_seen;
 pub use objective::Objective;
 pub use parameter::{PARAMETERS, Parameter, Parameters};
 pub use place::{ObservedAt, Place, PlaceDays, PlaceYear, place_years};
-pub use profile::Profile;
+pub use profile::{FLAT_PROFILE, Profile};
 pub use run::{FitEnd, FitResult, Fitted, Follow, LEAST_WINTERS, Plan, Stage, Unfollowed, fit};
 pub use scores::{KlingGupta, Pair, kling_gupta, nash_sutcliffe};
 pub use search::{Asked, Found, Search, refine, search};

@@ -7,7 +7,7 @@ use serde::Serialize;
 /// Values of each parameter, spread evenly over its bounds.
 const POINTS: usize = 9;
 /// A parameter whose profile never falls by more than this, in units of the objective, is not identified by the snow.
-const FLAT: f64 = 0.01;
+pub const FLAT_PROFILE: f64 = 0.01;
 
 /// The objective over the bounds of one parameter.
 #[derive(Debug, Clone, PartialEq, Serialize)]
@@ -61,7 +61,7 @@ pub(super) fn profiles<E>(
         let points: Vec<(f64, f64)> = shares.zip(found.iter().map(|found| found.value)).collect();
         let highest = points.iter().fold(best.value, |highest, (_, value)| highest.max(*value));
         let fall = points.iter().map(|(_, value)| highest - value).fold(0.0, f64::max);
-        Profile { key: bounded.parameter.key, points, fall, is_identified: fall > FLAT }
+        Profile { key: bounded.parameter.key, points, fall, is_identified: fall > FLAT_PROFILE }
     };
     Ok(found.chunks(POINTS).enumerate().map(profile).collect())
 }

@@ -96,6 +96,9 @@ pub struct Fitted {
     pub on_own: Vec<Judged>,
     /// Judged on the years of the other half; of all years none.
     pub on_others: Vec<Judged>,
+    /// Against what was observed in every year, seen or not, a site each.
+    #[serde(skip)]
+    pub compared: Vec<Comparison>,
 }
 
 /// What a fit found.
@@ -114,9 +117,6 @@ pub struct FitResult {
     pub not_identified: Vec<&'static str>,
     /// Sets of parameters that were tried.
     pub tried: usize,
-    /// The fit on all years against what was observed, a site each.
-    #[serde(skip)]
-    pub compared: Vec<Comparison>,
 }
 
 /// Fits.
@@ -163,6 +163,7 @@ pub fn fit(plan: &Plan<'_>, follow: &mut dyn Follow) -> Result<FitResult, FitEnd
             on_own: on(split),
             on_others: split.others().map(on).unwrap_or_default(),
             parameters,
+            compared,
         });
     }
     let as_stated = held.compared(&plan.stated)?;
@@ -170,9 +171,8 @@ pub fn fit(plan: &Plan<'_>, follow: &mut dyn Follow) -> Result<FitResult, FitEnd
         (split, as_stated.iter().map(|comparison| Judged::of(comparison, &winters, is_judged)).collect())
     });
     let unfitted = unfitted.collect();
-    let compared = held.compared(&fitted[0].parameters)?;
     let Told { profiles, not_identified, .. } = told;
-    Ok(FitResult { winters, fitted, unfitted, profiles, not_identified, tried, compared })
+    Ok(FitResult { winters, fitted, unfitted, profiles, not_identified, tried })
 }
 
 /// The winters of all years in use.

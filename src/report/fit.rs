@@ -88,7 +88,7 @@ pub fn fit_files(report: &FitReport<'_>) -> serde_json::Result<Vec<ReportFile>> 
         ("tables/fit-parameters.csv".to_owned(), tables::parameters(report)),
         ("tables/fit-profiles.csv".to_owned(), tables::profiles(report)),
     ];
-    files.extend(observed_tables(&report.result.compared, report.reader.units));
+    files.extend(observed_tables(&report.result.fitted[0].compared, report.reader.units));
     let names = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
     let manifest = lines(&Manifest {
         schema_version: SCHEMA_VERSION,

@@ -19,10 +19,7 @@ pub(super) const COLUMNS: [&str; 10] = [
 /// The numbers under [`COLUMNS`].
 pub(super) fn numbers(judged: &Judged) -> [Option<f64>; 10] {
     let bias = |bias: Option<Bias>| bias.and_then(|bias| bias.bias_pct);
-    let share = |part: fn(&crate::fit::Slope) -> f64| {
-        let (slope, survey) = judged.survey_error_by_winter_mm_per_c.as_ref().zip(judged.survey)?;
-        survey.bias_pct.map(|_| 100.0 * part(slope) / survey.observed_mm)
-    };
+    let slope = judged.survey_error_by_winter_pct_per_c();
     [
         judged.nash_sutcliffe,
         judged.kling_gupta.map(|kling_gupta| kling_gupta.efficiency),
@@ -31,8 +28,8 @@ pub(super) fn numbers(judged: &Judged) -> [Option<f64>; 10] {
         bias(judged.survey),
         judged.melt_out.map(|error| error.mean_days),
         judged.melt_out.map(|error| error.mean_size_days),
-        share(|slope| slope.slope),
-        share(|slope| slope.standard_error),
+        slope.map(|[slope, _]| slope),
+        slope.map(|[_, error]| error),
         Some(judged.years as f64),
     ]
 }
