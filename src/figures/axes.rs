@@ -46,7 +46,7 @@ impl AmountTicks {
 }
 
 /// `mantissa * 10^power` without the error of a repeated sum.
-fn value(mantissa: i64, power: i32) -> f64 {
+pub(super) fn value(mantissa: i64, power: i32) -> f64 {
     let ten = libm::pow(10.0, f64::from(power.abs()));
     if power < 0 { mantissa as f64 / ten } else { mantissa as f64 * ten }
 }

@@ -3,6 +3,7 @@
 mod bands;
 mod comparisons;
 mod days;
+mod fits;
 mod records;
 mod studies;
 mod through_year;

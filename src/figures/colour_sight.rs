@@ -108,7 +108,7 @@ fn text_and_lines_stand_out_from_paper_and_band() {
             }
         }
     }
-    for bar in [theme::SNOWFALL, theme::RAIN, theme::MELT, theme::MODELLED] {
+    for bar in [theme::SNOWFALL, theme::RAIN, theme::MELT, theme::MODELLED, theme::NOT_SEEN] {
         assert!(contrast(bar, theme::PAPER) >= 3.0, "{bar:?}");
     }
     for lettering in [theme::TITLE, theme::NAME, theme::LABEL, theme::NOTE] {

@@ -80,6 +80,17 @@ pub(super) fn percent_size(percent: f64) -> String {
     }
 }
 
+/// `0.88`, `−0.04`: a score, or anything else to two decimals.
+pub(super) fn score(score: f64) -> String {
+    let text = grouped(score.abs(), 2);
+    if score < 0.0 && text != "0.00" { format!("{MINUS}{text}") } else { text }
+}
+
+/// `1 winter`, `24 winters`.
+pub(super) fn counted(count: usize, one: &str) -> String {
+    format!("{} {one}{}", grouped(count as f64, 0), if count == 1 { "" } else { "s" })
+}
+
 /// `+2 °C`, `−0.9 °F`, `0 °C`: a warming level.
 pub(super) fn level(units: UnitSystem, level_c: f64) -> String {
     warming(units, level_c, 100.0)

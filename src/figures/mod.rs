@@ -3,10 +3,12 @@
 //! A figure is a pure function from [`Findings`] to bytes, and a number that is drawn is a number there. It states its
 //! finding in its title, names what it shows where it stands, and says that spread is chance.
 
+mod against;
 mod apart;
 mod axes;
 mod backend;
 mod daily;
+mod fits;
 mod generator_sheet;
 mod headline;
 mod labels;
@@ -14,12 +16,14 @@ mod marks;
 mod melt_timing;
 mod observed_swe;
 mod page;
+mod parameter_profiles;
 mod reading;
 mod record_precipitation;
 mod record_years;
 mod scales;
 mod sheet;
 mod shown;
+mod survey_error;
 mod swe_by_band;
 mod swe_by_level;
 mod swe_pair;
@@ -27,13 +31,16 @@ mod swe_through_year;
 mod text_width;
 pub mod theme;
 mod thin;
+mod value_ticks;
 mod window_volume;
+mod winters_not_seen;
 
 #[cfg(test)]
 mod check;
 #[cfg(test)]
 mod colour_sight;
 
+pub use fits::{DrawnFit, FIT_FIGURES, FIT_SITE_FIGURES, FitFigure, FitPart, FitSiteFigure, of_fit};
 pub use labels::sentence;
 pub use text_width::text_width;
 
@@ -161,10 +168,6 @@ pub struct Svg {
 
 /// `300 realizations of 30 years`.
 fn ensemble(findings: &Findings) -> String {
-    let count = |n: usize, one: &str| {
-        let plural = if n == 1 { "" } else { "s" };
-        format!("{} {one}{plural}", labels::grouped(n as f64, 0))
-    };
-    let realizations = count(findings.realizations, "realization");
-    format!("{realizations} of {}", count(findings.years, "year"))
+    let realizations = labels::counted(findings.realizations, "realization");
+    format!("{realizations} of {}", labels::counted(findings.years, "year"))
 }

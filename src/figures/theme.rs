@@ -25,6 +25,9 @@ pub const BAND: RGBColor = RGBColor(0xe9, 0xef, 0xf2);
 /// What the model makes of the record, beside what was observed in ink.
 pub const MODELLED: RGBColor = WARMER[0];
 
+/// What the model makes of winters that its fit has not seen.
+pub const NOT_SEEN: RGBColor = WARMER[2];
+
 /// Snow that falls, rain, and melt, day by day; each in a strip that is named.
 pub const SNOWFALL: RGBColor = EDGE;
 /// Rain.

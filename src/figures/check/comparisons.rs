@@ -10,19 +10,19 @@ use crate::units::UnitSystem;
 
 /// A made-up site: SWE rises to `peak_mm` in the year's middle and is gone after it; the model has a tenth less.
 #[derive(Clone, Copy)]
-struct Made {
-    site: &'static str,
-    kind: Kind,
-    years: i32,
-    peak_mm: f64,
-    bias_pct: Option<f64>,
+pub(super) struct Made {
+    pub site: &'static str,
+    pub kind: Kind,
+    pub years: i32,
+    pub peak_mm: f64,
+    pub bias_pct: Option<f64>,
 }
 
-const PLAIN: Made =
+pub(super) const PLAIN: Made =
     Made { site: "Heron Meadow", kind: Kind::Pillow, years: 24, peak_mm: 500.0, bias_pct: Some(-10.0) };
 
 impl Made {
-    fn comparison(self) -> Comparison {
+    pub(super) fn comparison(self) -> Comparison {
         let starts = WaterYearStart(MonthDay::new(10, 1).unwrap());
         let is_read = |day: usize| match self.kind {
             Kind::Pillow => day != 40 && !(100..110).contains(&day),

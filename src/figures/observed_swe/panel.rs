@@ -1,11 +1,11 @@
 //! One water year: observed and modelled SWE through its days.
 
 use super::super::axes::AmountTicks;
+use super::super::labels::score;
 use super::super::sheet::{Drawn, HPos, Plot, Sheet, Stroke, VPos};
 use super::super::swe_pair;
 use super::super::theme::{BAND, EDGE, LABEL, NAME, NOTE};
 use super::grid::Place;
-use super::words::score;
 use crate::calendar::{MONTHS, date_of};
 use crate::fit::ComparedYear;
 use crate::observed::Kind;

@@ -1,8 +1,9 @@
 //! What the figure says.
 
 use super::super::Setting;
-use super::super::labels::{days_in_words, grouped, percent_size, size_and_unit};
-use crate::fit::{Bias, ComparedYear, Comparison};
+use super::super::against::against;
+use super::super::labels::{counted, days_in_words, grouped, score, size_and_unit};
+use crate::fit::{ComparedYear, Comparison};
 use crate::observed::Kind;
 use crate::units::UnitSystem;
 
@@ -82,22 +83,6 @@ fn finding(comparison: &Comparison, units: UnitSystem) -> String {
     format!("At {}, {what}{melt_out}{nse}", comparison.site)
 }
 
-/// `10 % below the observed`.
-fn against(bias: &Bias, units: UnitSystem) -> String {
-    match bias.bias_pct {
-        None => format!(
-            "{} where {} were observed",
-            size_and_unit(units, bias.modelled_mm),
-            size_and_unit(units, bias.observed_mm)
-        ),
-        Some(percent) if percent_size(percent) == "0" => "as high as the observed".to_owned(),
-        Some(percent) => {
-            let direction = if percent < 0.0 { "below" } else { "above" };
-            format!("{} % {direction} the observed", percent_size(percent))
-        }
-    }
-}
-
 /// `2001: observed peak 612 mm, modelled 560 mm, NSE 0.93`.
 fn described(year: &ComparedYear, units: UnitSystem) -> String {
     let nse = year.nash_sutcliffe.map_or(String::new(), |nse| format!(", NSE {}", score(nse)));
@@ -120,14 +105,4 @@ fn described(year: &ComparedYear, units: UnitSystem) -> String {
         ),
         (None, None) => format!("{}: {}{nse}", year.water_year, counted(year.readings, "reading")),
     }
-}
-
-/// A score to two decimals, with a true minus sign.
-pub(super) fn score(score: f64) -> String {
-    let text = grouped(score.abs(), 2);
-    if score < 0.0 && text != "0.00" { format!("\u{2212}{text}") } else { text }
-}
-
-fn counted(count: usize, one: &str) -> String {
-    format!("{} {one}{}", grouped(count as f64, 0), if count == 1 { "" } else { "s" })
 }
