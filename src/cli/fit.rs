@@ -1,5 +1,7 @@
 //! `thawline fit`: parameters that bring the model nearest to observed snow, and how it does on winters that it has not seen.
 
+mod told;
+
 use super::arguments::Shared;
 use super::assemble::assemble;
 use super::failure::{Failure, may_be_replaced, unpublished};
@@ -8,10 +10,11 @@ use super::pool::in_pool;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
 use super::ready::Ready;
 use crate::fault::Fault;
-use crate::fit::{FitEnd, Follow, Held, LEAST_WINTERS, Plan, Stage, Value, fit};
+use crate::fit::{FitEnd, Held, LEAST_WINTERS, Plan, Value, fit};
 use crate::report::{FitReport, SCHEMA_VERSION, fit_files, fit_in_words, publish};
 use serde::Serialize;
 use std::path::{Path, PathBuf};
+use told::Told;
 
 #[derive(Serialize)]
 struct Done<'a> {
@@ -62,8 +65,11 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         evaluations: scenario.fit.evaluations,
         seed: scenario.seed,
     };
-    let result = in_pool(shared, || fit(&plan, &mut Told(&progress)))?;
-    progress.ends();
+    let (result, pace) = in_pool(shared, || {
+        let mut told = Told::new(&progress, &plan);
+        let result = fit(&plan, &mut told);
+        (result, told.ends())
+    })?;
     let result = result.map_err(|end| match end {
         FitEnd::Stopped => Failure::Interrupted,
         FitEnd::Ledger(open) => Failure::Ours(open.to_string()),
@@ -107,26 +113,9 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     }
     if !shared.quiet {
         let page = target.join("fit.html");
-        output::complain(&format!("{}page: {}\n", fit_in_words(&report), page.display()));
+        output::complain(&format!("{pace}\n{}page: {}\n", fit_in_words(&report), page.display()));
     }
     Ok(())
-}
-
-/// What a fit says as it goes.
-struct Told<'a>(&'a Progress);
-
-impl Follow for Told<'_> {
-    fn begins(&mut self, stage: Stage) {
-        self.0.stage(match stage {
-            Stage::Search => "searching for parameters on all winters and on halves of them",
-            Stage::Profiles => "looking how well the snow tells each of them",
-            Stage::Again => "searching again without those that the snow does not tell",
-        });
-    }
-
-    fn wants_stop(&self) -> bool {
-        is_interrupted()
-    }
 }
 
 fn target(ready: &Ready, shared: &Shared) -> Result<PathBuf, Failure> {

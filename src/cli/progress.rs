@@ -51,6 +51,23 @@ impl Progress {
         }
     }
 
+    /// A bar of so many `things`, or of a number not known: only on a terminal.
+    pub fn bar_of(&self, things: &str, total: Option<u64>) -> Option<ProgressBar> {
+        if !matches!(self.show, Show::Bar) {
+            return None;
+        }
+        let template = match total {
+            Some(_) => format!("{{bar:32}} {{pos}} of {{len}} {things}, {{rate}}, {{eta}} left"),
+            None => format!("{{pos}} {things}, {{rate}}"),
+        };
+        let style = ProgressStyle::with_template(&template)
+            .unwrap_or_else(|_| ProgressStyle::default_bar())
+            .with_key("rate", |state: &ProgressState, text: &mut dyn std::fmt::Write| {
+                let _ = write!(text, "{:.0} a second", state.per_sec());
+            });
+        Some(ProgressBar::with_draw_target(total, ProgressDrawTarget::stderr()).with_style(style))
+    }
+
     /// Says that a stage begins.
     pub fn stage(&self, text: &str) {
         self.ends();
@@ -62,16 +79,8 @@ impl Progress {
 
 impl Watch for Progress {
     fn begins(&self, realizations: u32) {
-        if matches!(self.show, Show::Bar) {
-            let style =
-                ProgressStyle::with_template("{bar:32} {pos} of {len} realizations, {rate}, {eta} left")
-                    .unwrap_or_else(|_| ProgressStyle::default_bar())
-                    .with_key("rate", |state: &ProgressState, text: &mut dyn std::fmt::Write| {
-                        let _ = write!(text, "{:.0} a second", state.per_sec());
-                    });
-            let bar =
-                ProgressBar::with_draw_target(Some(u64::from(realizations)), ProgressDrawTarget::stderr());
-            self.bar.get_or_init(|| bar.with_style(style));
+        if let Some(bar) = self.bar_of("realizations", Some(u64::from(realizations))) {
+            self.bar.get_or_init(|| bar);
         }
     }
 
