@@ -17,12 +17,12 @@ mod yardsticks;
 use super::answer::Answer;
 use super::generator_sheet::snow_mismatch;
 use super::numbers::counted;
-use super::page::page;
+use super::page::{figure, page};
 use super::study::Study;
 use super::{cautions, terms};
 use crate::basin::Basin;
 use crate::figures::{Part, Svg};
-use maud::{Markup, PreEscaped, html};
+use maud::{Markup, html};
 
 /// The page; `of_sites` are the figures of observed snow. Nothing is fetched and no script runs: its own policy forbids
 /// both.
@@ -87,11 +87,6 @@ impl Figures<'_> {
     fn of(&self, part: Part) -> Markup {
         html! { @for (_, svg) in self.0.iter().filter(|(of, _)| *of == part) { (figure(svg)) } }
     }
-}
-
-/// A figure, and how to read it.
-fn figure(figure: &Svg) -> Markup {
-    html! { figure { div.scroll { (PreEscaped(&figure.text)) } details { summary { "How to read this figure" } p { (figure.caption) } } } }
 }
 
 fn list_section(title: &str, sentences: &[String]) -> Markup {

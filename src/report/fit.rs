@@ -1,9 +1,13 @@
 //! What a fit found: the file of its parameters, a page, a document, tables, words for a terminal.
 
+mod errors;
+mod figures;
 mod judged;
 mod page;
 mod parameters;
 mod tables;
+mod values;
+mod winters;
 
 use super::SCHEMA_VERSION;
 use super::json::lines;
@@ -12,7 +16,7 @@ use super::observed::observed_tables;
 use super::reader::Reader;
 use super::study::{Input, Origin};
 use super::tables::ReportFile;
-use crate::fit::{Bounded, FitResult, Fitted, Judged, Objective, Parameters, Split};
+use crate::fit::{Bounded, Comparison, FitResult, Fitted, Judged, Objective, Parameters, Split, not_seen};
 use serde::Serialize;
 use std::fmt::Write;
 
@@ -51,6 +55,8 @@ struct Document<'a> {
     starts: usize,
     evaluations: usize,
     result: &'a FitResult,
+    /// Each winter as the fit on the half of every other year that it is not in makes it, a site each.
+    winters_not_seen: &'a [Comparison],
 }
 
 #[derive(Serialize)]
@@ -69,6 +75,8 @@ struct Manifest<'a> {
 /// # Errors
 /// A number that JSON cannot hold: a fault of ours.
 pub fn fit_files(report: &FitReport<'_>) -> serde_json::Result<Vec<ReportFile>> {
+    let not_seen = not_seen(report.result);
+    let drawn = figures::drawn(report, &not_seen);
     let document = lines(&Document {
         schema_version: SCHEMA_VERSION,
         program: "thawline",
@@ -79,16 +87,19 @@ pub fn fit_files(report: &FitReport<'_>) -> serde_json::Result<Vec<ReportFile>> 
         starts: report.starts,
         evaluations: report.evaluations,
         result: report.result,
+        winters_not_seen: &not_seen,
     })?;
     let mut files = vec![
         (PARAMETERS_FILE.to_owned(), parameters::parameters_toml(report)),
-        ("fit.html".to_owned(), page::page(report)),
+        ("fit.html".to_owned(), page::page(report, &drawn)),
         ("fit.json".to_owned(), document),
         ("tables/fit-scores.csv".to_owned(), tables::scores(report)),
         ("tables/fit-parameters.csv".to_owned(), tables::parameters(report)),
         ("tables/fit-profiles.csv".to_owned(), tables::profiles(report)),
     ];
+    files.push(("tables/fit-winters.csv".to_owned(), winters::winters(report, &not_seen)));
     files.extend(observed_tables(&report.result.fitted[0].compared, report.reader.units));
+    files.extend(drawn.files());
     let names = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
     let manifest = lines(&Manifest {
         schema_version: SCHEMA_VERSION,

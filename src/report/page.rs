@@ -1,5 +1,6 @@
-//! A self-contained page: its style, and a policy by which nothing is fetched and no script runs.
+//! A self-contained page: its style, its figures, and a policy by which nothing is fetched and no script runs.
 
+use crate::figures::Svg;
 use maud::{DOCTYPE, Markup, PreEscaped, html};
 use sha2::{Digest, Sha256};
 
@@ -23,6 +24,11 @@ pub(super) fn page(title: &str, content: &Markup) -> Vec<u8> {
         }
     };
     page.into_string().into_bytes()
+}
+
+/// A figure, and how to read it.
+pub(super) fn figure(figure: &Svg) -> Markup {
+    html! { figure { div.scroll { (PreEscaped(&figure.text)) } details { summary { "How to read this figure" } p { (figure.caption) } } } }
 }
 
 /// RFC 4648, for the digest in the page's policy.

@@ -43,9 +43,20 @@ fn what_was_fitted_is_handed_on_by_one_line() {
     let ended = basin.run("fit mine.toml --threads 2");
     assert_eq!(ended.status, 0, "{}", ended.stderr);
     assert!(ended.stderr.contains("fitted on the coldest half of the winters"), "{}", ended.stderr);
+    assert!(ended.stderr.contains("sets of parameters tried in"), "{}", ended.stderr);
     let again = basin.run("fit mine.toml --threads 1 --quiet --into again");
     assert_eq!((again.status, again.stderr.as_str()), (0, ""));
-    for file in ["parameters.toml", "fit.json", "tables/fit-scores.csv"] {
+    for file in [
+        "parameters.toml",
+        "fit.json",
+        "fit.html",
+        "tables/fit-scores.csv",
+        "tables/fit-winters.csv",
+        "figures/observed-swe-1.svg",
+        "figures/parameter-profiles.svg",
+        "figures/survey-error-1.svg",
+        "figures/winters-not-seen-1.svg",
+    ] {
         assert_eq!(
             basin.read(&format!("output/mine-fit/{file}")),
             basin.read(&format!("again/{file}")),
@@ -55,6 +66,7 @@ fn what_was_fitted_is_handed_on_by_one_line() {
 
     let page = basin.read("again/fit.html");
     assert!(page.contains("A planning aid. Not for flood forecasting"), "the page carries the cautions");
+    assert_eq!(page.matches("<figure>").count(), 4, "each figure stands on the page, too");
 
     let of_all = &json(&basin, "again/fit.json")["result"]["fitted"][0]["on_own"][0];
     let with = plain.replacen("[snow]\n", "[snow]\nfitted = \"again/parameters.toml\"\n", 1);

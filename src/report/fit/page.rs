@@ -1,15 +1,15 @@
 //! `fit.html`: what was fitted, and whether it may be trusted in winters that it has not seen; words first.
 
 use super::super::cautions::PLANNING_AID;
-use super::super::numbers::{DASH, counted, fixed, signed};
+use super::super::numbers::counted;
 use super::super::page;
-use super::judged::numbers;
-use super::{FitReport, PARAMETERS_FILE, effort, judgements, of_other_years};
-use crate::fit::{Judged, Split};
-use maud::{Markup, html};
+use super::figures::Drawn;
+use super::{FitReport, PARAMETERS_FILE, effort, errors, of_other_years, values};
+use crate::figures::FitPart;
+use maud::html;
 
 /// The page.
-pub(super) fn page(report: &FitReport<'_>) -> Vec<u8> {
+pub(super) fn page(report: &FitReport<'_>, drawn: &Drawn) -> Vec<u8> {
     let result = report.result;
     let content = html! {
         p.over { (effort(report)) }
@@ -24,16 +24,28 @@ pub(super) fn page(report: &FitReport<'_>) -> Vec<u8> {
             code { "[snow]" } ", by a path from the scenario's folder, and take out of the scenario the keys that it states itself."
         }
         h2 { "Skill in winters seen and not seen" }
-        (scores(report))
+        @for figure in drawn.of(FitPart::Skill) { (page::figure(figure)) }
+        (errors::tables(report))
         p {
             "Errors are modelled less observed. NSE is the Nash-Sutcliffe efficiency over all readings, KGE the Kling-Gupta efficiency of 2009 \
              over the readings on which snow was observed or modelled; skill is what is gained above the mean of the other years on the same \
-             day of the year: 0 is no better than that mean, and much of a high NSE is the season itself. The last column is the slope of the \
+             day of the year: 0 is no better than that mean, and much of a high NSE is the season itself. The slope is that of the \
              error of survey SWE on the winter's temperature, in percent of mean survey SWE, with its standard error: where it differs from \
              0 by more than twice that, the model answers to a warmer winter otherwise than the snow did."
         }
+        h2 { "Observed and modelled snow, year by year" }
+        p {
+            "Here the model has the parameters fitted on all years, these years among them: it looks better than it is in years that it has \
+             not seen."
+        }
+        @for figure in &drawn.of_sites { (page::figure(&figure.1)) }
+        p {
+            "Every year stands in " code { "tables/observed-by-year.csv" } ", every day in " code { "tables/observed-daily.csv" }
+            ", each winter as fits make it that have seen it and that have not in " code { "tables/fit-winters.csv" } "."
+        }
         h2 { "Parameters" }
-        (parameters(report))
+        @for figure in drawn.of(FitPart::Parameters) { (page::figure(figure)) }
+        (values::tables(report))
         p {
             "Searched for by dynamically dimensioned search (Tolson & Shoemaker 2007) from " (counted(report.starts, "start")) " of "
             (counted(report.evaluations, "set")) " a split, the first at the scenario's own values, and refined by a compass search. A profile holds one parameter at nine values \
@@ -52,7 +64,7 @@ pub(super) fn page(report: &FitReport<'_>) -> Vec<u8> {
         dl {
             dt { "Winter" } dd { "November to March, south of the equator May to September, at the station. Halves differ by one winter at most." }
             dt { "Driest and wettest" } dd { "By precipitation before the first survey date, as the gauge caught it." }
-            dt { "Every other year" } dd { "Of the winters with observed snow, in their order." }
+            dt { "Odd and even" } dd { "Every other winter with observed snow, in their order, from the first and from the second." }
             dt { "Objective" } dd { (objective(report)) }
         }
         h2 { "How to repeat it" }
@@ -70,65 +82,4 @@ fn objective(report: &FitReport<'_>) -> &'static str {
         }
         crate::fit::Objective::NashSutcliffe => "NSE; the mean over all sites.",
     }
-}
-
-fn scores(report: &FitReport<'_>) -> Markup {
-    let heads = [
-        "Fitted on",
-        "judged on",
-        "site",
-        "NSE",
-        "KGE",
-        "skill",
-        "peak, %",
-        "survey, %",
-        "melt-out, days",
-        "slope, % per °C",
-    ];
-    html! { div.scroll { table {
-        thead { tr { @for head in heads { th { (head) } } } }
-        tbody {
-            @for fitted in &report.result.fitted {
-                @for (judged_on, sites) in judgements(fitted) { @for judged in sites { (row(fitted.split.words(), judged_on, judged)) } }
-            }
-            @for (judged_on, sites) in &report.result.unfitted { @for judged in sites { (row("nothing", *judged_on, judged)) } }
-        }
-    } } }
-}
-
-fn row(fitted_on: &str, judged_on: Split, judged: &Judged) -> Markup {
-    let [nse, kge, skill, peak, survey, late, size, slope, error, _] = numbers(judged);
-    let shown = |value: Option<f64>| value.map_or(DASH.to_owned(), |value| fixed(value, 2));
-    let percent = |value: Option<f64>| value.map_or(DASH.to_owned(), |value| signed(value, 1));
-    let melt_out = late
-        .zip(size)
-        .map_or(DASH.to_owned(), |(late, size)| format!("{} (size {})", signed(late, 1), fixed(size, 1)));
-    let slope = slope
-        .zip(error)
-        .map_or(DASH.to_owned(), |(slope, error)| format!("{} ± {}", signed(slope, 1), fixed(error, 1)));
-    html! { tr {
-        td { (fitted_on) } td { (judged_on.words()) } td { (judged.site) }
-        td { (shown(nse)) } td { (shown(kge)) } td { (shown(skill)) } td { (percent(peak)) } td { (percent(survey)) }
-        td { (melt_out) } td { (slope) }
-    } }
-}
-
-fn parameters(report: &FitReport<'_>) -> Markup {
-    let shown = |value: Option<f64>| value.map_or(DASH.to_owned(), |value| fixed(value, 3));
-    html! { div.scroll { table {
-        thead { tr {
-            th { "Key" } th { "unit" } th { "bounds" } th { "scenario" }
-            @for fitted in &report.result.fitted { th { (fitted.split.words()) } }
-            th { "profile falls by" } th { "identified" }
-        } }
-        tbody { @for profile in &report.result.profiles {
-            @if let Some(bounded) = report.searched.iter().find(|bounded| bounded.parameter.key == profile.key) { tr {
-                td { code { (profile.key) } } td { (bounded.parameter.unit) }
-                td { (fixed(bounded.bounds[0], 2)) " to " (fixed(bounded.bounds[1], 2)) }
-                td { (shown(bounded.parameter.get(report.stated))) }
-                @for fitted in &report.result.fitted { td { (shown(bounded.parameter.get(&fitted.parameters))) } }
-                td { (fixed(profile.fall, 3)) } td { (if profile.is_identified { "yes" } else { "no" }) }
-            } }
-        } }
-    } } }
 }

@@ -1,0 +1,69 @@
+//! Parameters as tables of the page: what was fitted on all years, and on each half of them.
+
+use super::super::numbers::{DASH, fixed};
+use super::FitReport;
+use crate::fit::{Bounded, Profile, Split};
+use maud::{Markup, html};
+
+/// Both tables. One of all splits would be wider than a page.
+pub(super) fn tables(report: &FitReport<'_>) -> Markup {
+    let rows: Vec<(&Profile, &Bounded)> = report
+        .result
+        .profiles
+        .iter()
+        .filter_map(|profile| {
+            let bounded = report.searched.iter().find(|bounded| bounded.parameter.key == profile.key)?;
+            Some((profile, bounded))
+        })
+        .collect();
+    html! { (on_all_years(report, &rows)) (on_halves(report, &rows)) }
+}
+
+fn on_all_years(report: &FitReport<'_>, rows: &[(&Profile, &Bounded)]) -> Markup {
+    html! { div.scroll { table.narrow {
+        caption { "Fitted on all years" }
+        thead { tr {
+            th.text scope="col" { "Parameter" } th.text scope="col" { "bounds" } th scope="col" { "scenario" } th scope="col" { "fitted" }
+            th scope="col" { "profile falls by" } th scope="col" { "identified" }
+        } }
+        tbody { @for (profile, bounded) in rows { tr {
+            td.text { (bounded.parameter.title) br; code { (profile.key) } }
+            td.text { (fixed(bounded.bounds[0], 2)) " to " (fixed(bounded.bounds[1], 2)) " " (bounded.parameter.unit.replace("degC", "°C")) }
+            td { (value(bounded.parameter.get(report.stated))) }
+            td { (value(bounded.parameter.get(&report.result.fitted[0].parameters))) }
+            td { (fixed(profile.fall, 3)) }
+            td { (if profile.is_identified { "yes" } else { "no" }) }
+        } } }
+    } } }
+}
+
+fn on_halves(report: &FitReport<'_>, rows: &[(&Profile, &Bounded)]) -> Markup {
+    let halves = || report.result.fitted.iter().filter(|fitted| fitted.split != Split::All);
+    html! { div.scroll { table.narrow {
+        caption { "Fitted on halves of the winters: how far they agree says how well a value is known" }
+        thead { tr {
+            th.text scope="col" { "Parameter" }
+            @for fitted in halves() { th scope="col" { (head(fitted.split)) } }
+        } }
+        tbody { @for (_, bounded) in rows { tr {
+            td.text { (bounded.parameter.title) }
+            @for fitted in halves() { td { (value(bounded.parameter.get(&fitted.parameters))) } }
+        } } }
+    } } }
+}
+
+fn value(value: Option<f64>) -> String {
+    value.map_or(DASH.to_owned(), |value| fixed(value, 3))
+}
+
+fn head(split: Split) -> &'static str {
+    match split {
+        Split::All => "all",
+        Split::Odd => "odd",
+        Split::Even => "even",
+        Split::Coldest => "coldest",
+        Split::Warmest => "warmest",
+        Split::Driest => "driest",
+        Split::Wettest => "wettest",
+    }
+}
