@@ -9,7 +9,7 @@ use super::sheet::{Drawn, HPos, Sheet, VPos};
 use super::theme::{LABEL, MARGIN_PX, NAME, WIDTH_PX};
 use super::value_ticks::ValueTicks;
 use super::{Setting, Svg};
-use crate::fit::Profile;
+use crate::fit::{FLAT_PROFILE, Profile};
 use panel::{HALVES_PX, Panel};
 use words::Words;
 
@@ -32,6 +32,8 @@ const BELOW_PX: f64 = 56.0;
 const AXIS_PX: f64 = 26.0;
 /// Panels reach so far below the best, in units of the objective, or as far as the deepest profile, if that is less.
 const DEEPEST: f64 = 0.1;
+/// but no less than this, so that it shows how near a profile comes to telling.
+const LEAST_DEEP: f64 = 2.0 * FLAT_PROFILE;
 const STEPS: usize = 4;
 
 /// A parameter as it is drawn.
@@ -105,7 +107,7 @@ fn row<'a>(fit: &DrawnFit<'_>, profile: &'a Profile) -> Option<Row<'a>> {
 fn paint(rows: &[Row<'_>], setting: &Setting<'_>, words: &Words) -> Drawn<String> {
     let heading = Paragraphs::heading(setting.study_title, &words.title, &words.sample);
     let key = Paragraphs::key(&words.key);
-    let deepest = rows.iter().map(|row| row.profile.fall).fold(0.0, f64::max).min(DEEPEST);
+    let deepest = rows.iter().map(|row| row.profile.fall).fold(LEAST_DEEP, f64::max).min(DEEPEST);
     let ticks = ValueTicks::around(-deepest, 0.0, STEPS);
     let labels = ticks.ticks.iter().map(|(_, label)| LABEL.width(label)).fold(0.0, f64::max);
     let left = MARGIN_PX + labels + 12.0;

@@ -80,10 +80,7 @@ mod tests {
             ["−2\u{2009}000", "−1\u{2009}000", "0", "1\u{2009}000"]
         );
         assert_eq!(ValueTicks::around(-61.0, 118.0, 4).ends(), [-100.0, 150.0]);
-        assert_eq!(
-            labels(&ValueTicks::around(3.0, 3.0, 4)),
-            ["2.4", "2.6", "2.8", "3.0", "3.2", "3.4", "3.6"]
-        );
+        assert_eq!(labels(&ValueTicks::around(3.0, 3.0, 4)), ["2.5", "3.0", "3.5"]);
     }
 
     #[test]

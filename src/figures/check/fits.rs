@@ -86,8 +86,10 @@ impl Made {
             compared: vec![comparison.clone()],
         });
         let mut falls = self.first_falls;
-        let profiles: Vec<Profile> = PARAMETERS[..self.parameters]
+        let profiles: Vec<Profile> = PARAMETERS
             .iter()
+            .filter(|parameter| parameter.get(&stated()).is_some())
+            .take(self.parameters)
             .map(|parameter| {
                 let [low, high] = parameter.bounds;
                 let fall = falls;
