@@ -24,15 +24,14 @@ fn on_all_years(report: &FitReport<'_>, rows: &[(&Profile, &Bounded)]) -> Markup
         caption { "Fitted on all years" }
         thead { tr {
             th.text scope="col" { "Parameter" } th.text scope="col" { "bounds" } th scope="col" { "scenario" } th scope="col" { "fitted" }
-            th scope="col" { "profile falls by" } th scope="col" { "identified" }
+            th scope="col" { "profile falls by" }
         } }
         tbody { @for (profile, bounded) in rows { tr {
-            td.text { (bounded.parameter.title) br; code { (profile.key) } }
+            td.text { (bounded.parameter.title) @if !profile.is_identified { ", not identified" } br; code { (profile.key) } }
             td.text { (fixed(bounded.bounds[0], 2)) " to " (fixed(bounded.bounds[1], 2)) " " (bounded.parameter.unit.replace("degC", "°C")) }
             td { (value(bounded.parameter.get(report.stated))) }
             td { (value(bounded.parameter.get(&report.result.fitted[0].parameters))) }
             td { (fixed(profile.fall, 3)) }
-            td { (if profile.is_identified { "yes" } else { "no" }) }
         } } }
     } } }
 }
