@@ -10,9 +10,10 @@ use super::pool::in_pool;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
 use super::ready::Ready;
 use crate::fault::Fault;
-use crate::fit::{FitEnd, Held, LEAST_WINTERS, Plan, Value, fit};
-use crate::report::{FitReport, SCHEMA_VERSION, fit_files, fit_in_words, publish};
+use crate::fit::{FitEnd, Held, LEAST_WINTERS, Plan, Site, Value, fit, left_out, without};
+use crate::report::{FitReport, SCHEMA_VERSION, fit_files, fit_in_words, left_out_lines, publish};
 use serde::Serialize;
+use std::collections::BTreeSet;
 use std::path::{Path, PathBuf};
 use told::Told;
 
@@ -39,8 +40,8 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         output::complain(&crate::scenario::unlikely_lines(&ready.unlikely));
     }
     let scenario = &ready.scenario;
-    let sites = ready.sites();
-    if sites.is_empty() {
+    let all_sites = ready.sites();
+    if all_sites.is_empty() {
         return Err(refused(
             &ready,
             "observed_swe",
@@ -50,6 +51,15 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
             shared,
         ));
     }
+    let left_out = left_out(&all_sites, &ready.record.series);
+    if !shared.quiet {
+        output::complain(&left_out_lines(&left_out));
+    }
+    let remaining =
+        all_sites.iter().map(|site| Some((site, without(site, &left_out, &ready.record.series)?)));
+    let remaining: Vec<_> = remaining.flatten().collect();
+    let sites: Vec<Site<'_>> =
+        remaining.iter().map(|(site, observations)| Site { observations, ..**site }).collect();
     let plan = Plan {
         held: Held {
             sites: &sites,
@@ -76,7 +86,10 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         FitEnd::TooFewWinters(winters) => refused(
             &ready,
             "observed_swe",
-            &format!("{winters} water years in use with observed snow"),
+            &format!(
+                "{winters} water years in use with observed snow, {} more left out because the record is at fault",
+                left_out.iter().map(|out| out.water_year).collect::<BTreeSet<_>>().len()
+            ),
             &format!("at least {LEAST_WINTERS}, so that halves of them can be told apart"),
             "add years to the record or to the observed snow; `thawline check` says which are left out and why",
             shared,
@@ -90,6 +103,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         objective: plan.objective,
         starts: plan.starts,
         evaluations: plan.evaluations,
+        left_out: &left_out,
         result: &result,
         origin: ready.origin("fit", path, shared),
     };

@@ -9,6 +9,7 @@ mod held_against;
 #[cfg(test)]
 mod invented;
 mod judged;
+mod left_out;
 mod not_seen;
 mod objective;
 mod parameter;
@@ -27,6 +28,7 @@ mod year;
 
 pub use comparison::{Bias, Comparison, DateError, SurveyBias};
 pub use judged::{Held, Judged};
+pub use left_out::{LeftOut, Rule, left_out, without};
 pub use not_seen::not_seen;
 pub use objective::Objective;
 pub use parameter::{PARAMETERS, Parameter, Parameters};

@@ -75,7 +75,9 @@ pub static PARAMETERS: [Parameter; 15] = [
         key: "snow.degree_day_factor_mm_per_c_day.lowest",
         title: "lowest degree-day factor",
         unit: "mm per degC and day",
-        bounds: [0.0, 4.0],
+        // It stands in for the cold of winter snow (method): far below any factor of ripe snow. Cold winters hardly tell it, and
+        // wider bounds let a fit on them melt the snow of warm ones in February.
+        bounds: [0.0, 1.0],
         widest: [0.0, 50.0],
         is_usual: true,
         get: |of| of.snow.options.radiation.is_none().then_some(of.snow.degree_day_factor_lowest),
@@ -103,7 +105,8 @@ pub static PARAMETERS: [Parameter; 15] = [
         unit: "degC",
         bounds: [-2.0, 4.0],
         widest: [-20.0, 20.0],
-        is_usual: true,
+        // It makes up for the factor, and the other way round.
+        is_usual: false,
         get: |of| Some(of.snow.melt_base_c),
         set: |of, value| of.snow.melt_base_c = value,
     },

@@ -2,6 +2,7 @@
 
 use super::columns::Columns;
 use super::observations::{Counts, Observations, State};
+use crate::calendar::days_between;
 use crate::fault::Fault;
 use crate::table::{DateReader, Row, Table, Tally};
 use crate::weather::{FirstPlace, Reading, Suspicion};
@@ -13,6 +14,10 @@ use std::collections::BTreeMap;
 const MOST_MM: f64 = 12_000.0;
 /// A pillow without snow drifts so far below 0, mm; such a reading is 0.
 const DRIFT_MM: f64 = 25.0;
+/// A reading this far above, or below, both of its neighbours is a spike, mm,
+const SPIKE_MM: f64 = 25.0;
+/// where they are nearer to each other than this.
+const NEIGHBOURS_MM: f64 = 12.5;
 /// A file of more lines is one of something else.
 const MOST_LINES: usize = 400 * 366;
 
@@ -161,6 +166,14 @@ fn sift(lines: &mut [Line]) -> Vec<Suspicion> {
         let read = line.swe_mm.filter(|swe_mm| (-DRIFT_MM..=MOST_MM).contains(swe_mm));
         line.swe_mm = read.map(|swe_mm| swe_mm.max(0.0));
     }
+    let spikes = spikes(lines);
+    let found: Vec<_> = spikes.iter().filter_map(|at| Some((lines[*at], lines[*at].swe_mm?))).collect();
+    for at in spikes {
+        lines[at].swe_mm = None;
+    }
+    let mend = "No snow comes or goes for a day";
+    let spike =
+        suspicion("readings far from those of the day before and after, which agree", mend, true, &found);
     let below = suspicion("readings far below 0", "Do they stand for 'not measured'?", true, &negative);
     let drift = suspicion("readings a little below 0, read as 0", "", false, &drifted);
     let what = "readings above 12 000 mm, which no snowpack has held";
@@ -168,7 +181,24 @@ fn sift(lines: &mut [Line]) -> Vec<Suspicion> {
     let is_constant = possible.len() > 2 && possible.iter().all(|(_, swe_mm)| *swe_mm == possible[0].1);
     let same = is_constant
         .then(|| suspicion("readings, all of them the same", "Is it the right column?", false, &possible));
-    [beyond, below, drift, same.flatten()].into_iter().flatten().collect()
+    [beyond, below, drift, spike, same.flatten()].into_iter().flatten().collect()
+}
+
+/// Readings that are far above, or far below, those of both the day before and the day after, while these agree.
+fn spikes(lines: &[Line]) -> Vec<usize> {
+    let is_spike = |trio: &[Line]| {
+        let [before, line, after] = trio else { return false };
+        let days = [(before, line), (line, after)].map(|(day, next)| days_between(day.date, next.date));
+        let (Some(before), Some(mm), Some(after)) = (before.swe_mm, line.swe_mm, after.swe_mm) else {
+            return false;
+        };
+        let [rise, fall] = [mm - before, mm - after];
+        days == [1, 1]
+            && rise.abs().min(fall.abs()) > SPIKE_MM
+            && (rise > 0.0) == (fall > 0.0)
+            && (before - after).abs() < NEIGHBOURS_MM
+    };
+    lines.windows(3).enumerate().filter(|(_, trio)| is_spike(trio)).map(|(at, _)| at + 1).collect()
 }
 
 #[cfg(test)]
@@ -194,5 +224,25 @@ mod tests {
         let said: Vec<(usize, bool)> =
             read.suspicions.iter().map(|it| (it.count, it.is_taken_as_missing)).collect();
         assert_eq!(said, [(1, true), (1, false)]);
+    }
+
+    /// A reading of one day far from both its neighbours is none; a storm, a slow thaw and a gap are left alone.
+    #[test]
+    fn spikes_are_no_snow() {
+        let first = NaiveDate::from_ymd_opt(2001, 1, 1).expect("a date");
+        let found = |readings: &[(u64, f64)]| {
+            let line = |(number, (day, swe_mm)): (usize, &(u64, f64))| Line {
+                date: first + chrono::Days::new(*day),
+                number,
+                swe_mm: Some(*swe_mm),
+            };
+            spikes(&readings.iter().enumerate().map(line).collect::<Vec<_>>())
+        };
+        assert_eq!(found(&[(0, 300.0), (1, 340.0), (2, 302.0)]), [1]);
+        assert_eq!(found(&[(0, 300.0), (1, 260.0), (2, 302.0)]), [1], "downwards");
+        assert_eq!(found(&[(0, 300.0), (1, 340.0), (2, 338.0)]), [0; 0], "a storm");
+        assert_eq!(found(&[(0, 300.0), (1, 340.0), (2, 314.0)]), [0; 0], "neighbours that do not agree");
+        assert_eq!(found(&[(0, 300.0), (1, 324.0), (2, 300.0)]), [0; 0], "not far");
+        assert_eq!(found(&[(0, 300.0), (31, 340.0), (32, 300.0)]), [0; 0], "a course");
     }
 }

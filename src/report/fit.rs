@@ -3,11 +3,14 @@
 mod errors;
 mod figures;
 mod judged;
+mod left_out;
 mod page;
 mod parameters;
 mod tables;
 mod values;
 mod winters;
+
+pub use left_out::left_out_lines;
 
 use super::SCHEMA_VERSION;
 use super::json::lines;
@@ -16,7 +19,9 @@ use super::observed::observed_tables;
 use super::reader::Reader;
 use super::study::{Input, Origin};
 use super::tables::ReportFile;
-use crate::fit::{Bounded, Comparison, FitResult, Fitted, Judged, Objective, Parameters, Split, not_seen};
+use crate::fit::{
+    Bounded, Comparison, FitResult, Fitted, Judged, LeftOut, Objective, Parameters, Split, not_seen,
+};
 use serde::Serialize;
 use std::fmt::Write;
 
@@ -39,6 +44,8 @@ pub struct FitReport<'a> {
     pub starts: usize,
     /// Sets of parameters that each search tried.
     pub evaluations: usize,
+    /// Winters that were left out.
+    pub left_out: &'a [LeftOut],
     /// What was found.
     pub result: &'a FitResult,
     /// How it is repeated, and from what.
@@ -54,6 +61,7 @@ struct Document<'a> {
     objective: Objective,
     starts: usize,
     evaluations: usize,
+    left_out: &'a [LeftOut],
     result: &'a FitResult,
     /// Each winter as the fit on the half of every other year that it is not in makes it, a site each.
     winters_not_seen: &'a [Comparison],
@@ -86,6 +94,7 @@ pub fn fit_files(report: &FitReport<'_>) -> serde_json::Result<Vec<ReportFile>> 
         objective: report.objective,
         starts: report.starts,
         evaluations: report.evaluations,
+        left_out: report.left_out,
         result: report.result,
         winters_not_seen: &not_seen,
     })?;
@@ -97,6 +106,7 @@ pub fn fit_files(report: &FitReport<'_>) -> serde_json::Result<Vec<ReportFile>> 
         ("tables/fit-parameters.csv".to_owned(), tables::parameters(report)),
         ("tables/fit-profiles.csv".to_owned(), tables::profiles(report)),
     ];
+    files.push(("tables/fit-left-out.csv".to_owned(), left_out::table(report.left_out)));
     files.push(("tables/fit-winters.csv".to_owned(), winters::winters(report, &not_seen)));
     files.extend(observed_tables(&report.result.fitted[0].compared, report.reader.units));
     files.extend(drawn.files());
@@ -151,6 +161,9 @@ fn of_a_site(on_warm: &Judged, warm_own: &Judged, on_cold: &Judged) -> String {
     );
     if let Some(bias) = on_warm.peak.and_then(|peak| peak.bias_pct) {
         let _ = write!(text, " In winters warmer than it has seen, peak SWE is off by {} %", signed(bias, 1));
+        if let Some(error) = on_warm.peak_standard_error_pct {
+            let _ = write!(text, " (standard error {} %)", fixed(error, 1));
+        }
         if let Some(error) = on_warm.melt_out {
             let _ = write!(text, ", and melt-out by {} days in mean size", fixed(error.mean_size_days, 1));
         }

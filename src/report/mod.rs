@@ -26,7 +26,7 @@ pub use answer::{Answer, answer_in_words, period_name};
 pub use briefing::briefing_html;
 pub use checked::Checked;
 pub use daily::{DailyError, daily_csv};
-pub use fit::{FitReport, fit_files, fit_in_words};
+pub use fit::{FitReport, fit_files, fit_in_words, left_out_lines};
 pub use observed::{comparison_json, comparison_words, observed_tables};
 pub use publish::{PublishError, may_replace, publish};
 pub use reader::Reader;

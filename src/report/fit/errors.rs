@@ -83,9 +83,17 @@ fn skill(judged: &Judged) -> Vec<String> {
 }
 
 fn errors(judged: &Judged) -> Vec<String> {
-    let [.., peak, survey, late, size, slope, error, _] = numbers(judged);
-    let signed = |value: Option<f64>| value.map_or(DASH.to_owned(), |value| signed(value, 1));
+    let [.., peak, of_peak, survey, of_survey, late, size, slope, of_slope, _] = numbers(judged);
+    let with_error = |value: Option<f64>, error: Option<f64>| {
+        let error = error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 1)));
+        value.map_or(DASH.to_owned(), |value| signed(value, 1)) + &error
+    };
     let size = size.map_or(DASH.to_owned(), |size| fixed(size, 1));
-    let error = error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 1)));
-    vec![signed(peak), signed(survey), signed(late), size, signed(slope) + &error]
+    vec![
+        with_error(peak, of_peak),
+        with_error(survey, of_survey),
+        with_error(late, None),
+        size,
+        with_error(slope, of_slope),
+    ]
 }

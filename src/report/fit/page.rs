@@ -4,6 +4,7 @@ use super::super::cautions::PLANNING_AID;
 use super::super::numbers::counted;
 use super::super::page;
 use super::figures::Drawn;
+use super::left_out;
 use super::{FitReport, PARAMETERS_FILE, effort, errors, of_other_years, values};
 use crate::figures::FitPart;
 use maud::html;
@@ -29,10 +30,12 @@ pub(super) fn page(report: &FitReport<'_>, drawn: &Drawn) -> Vec<u8> {
         p {
             "Errors are modelled less observed. NSE is the Nash-Sutcliffe efficiency over all readings, KGE the Kling-Gupta efficiency of 2009 \
              over the readings on which snow was observed or modelled; skill is what is gained above the mean of the other years on the same \
-             day of the year: 0 is no better than that mean, and much of a high NSE is the season itself. The slope is that of the \
+             day of the year: 0 is no better than that mean, and much of a high NSE is the season itself. What stands after ± is a standard error, winters taken as independent. The slope is that of the \
              error of survey SWE on the winter's temperature, in percent of mean survey SWE, with its standard error: where it differs from \
              0 by more than twice that, the model answers to a warmer winter otherwise than the snow did."
         }
+        h2 { "Winters left out" }
+        (left_out::section(report.left_out))
         h2 { "Observed and modelled snow, year by year" }
         p {
             "Here the model has the parameters fitted on all years, these years among them: it looks better than it is in years that it has \

@@ -1,0 +1,275 @@
+//! Winters that no fit may see and that none is judged on: the record itself is at fault in them.
+//!
+//! Four rules, the same for every site and fixed before anything is fitted: they ask the readings and the weather, never the
+//! model. Limits without a source are common practice.
+
+use super::site::{Site, observed_days};
+use crate::calendar::date_of;
+use crate::observed::{Kind, Observations};
+use crate::weather::{Series, YearSpan, YearView};
+use chrono::Datelike;
+use serde::Serialize;
+
+/// Days at most this warm bring snow alone, and none of it melts, degC.
+const COLD_C: f64 = -2.0;
+/// So much must have fallen on them before gauge and pillow are compared, mm.
+const LEAST_COLD_MM: f64 = 50.0;
+/// What the pillow gained over what the gauge caught lies within this factor of the site's median year.
+const GAUGE_FACTOR: f64 = 1.4;
+/// A usual year is known from so many.
+const LEAST_YEARS: usize = 5;
+/// A pillow under snow reads the same for so many days on end,
+const FLAT_DAYS: usize = 10;
+/// while so much falls on cold ones: it is stuck, mm.
+const FLAT_MM: f64 = 25.0;
+/// Bare ground reads the same all summer; snow is above this, mm.
+const SNOW_MM: f64 = 10.0;
+/// A pillow that rises by so much in a day, and by more than twice what fell around it, was moved or mended, mm.
+const JUMP_MM: f64 = 40.0;
+/// Days before and after the rise whose precipitation counts, as gauges and pillows keep different hours.
+const JUMP_REACH_DAYS: usize = 2;
+/// A month's mean daily range lies so near that month's median year, degC,
+const RANGE_C: f64 = 5.0;
+/// or so near in scaled median deviations of its years: a sensor that fails shows it there first.
+const RANGE_DEVIATIONS: f64 = 4.0;
+/// Of a water year the first nine months are asked; snow is gone in the others, or nearly so.
+const MONTHS_ASKED: usize = 9;
+/// Median deviation of normal numbers to their standard deviation.
+const NORMAL_SCALE: f64 = 1.4826;
+
+/// A rule by which a winter is left out.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
+#[serde(rename_all = "kebab-case")]
+pub enum Rule {
+    /// Gauge and pillow tell of different winters.
+    GaugeAgainstPillow,
+    /// The pillow reads the same while it snows.
+    PillowStuck,
+    /// The pillow rises without precipitation.
+    PillowJumps,
+    /// The daily range of temperature is not that of the place.
+    TemperatureRange,
+}
+
+impl Rule {
+    /// Every rule, in the order in which they are asked.
+    pub const EACH: [Self; 4] =
+        [Self::GaugeAgainstPillow, Self::PillowStuck, Self::PillowJumps, Self::TemperatureRange];
+
+    /// Its name.
+    pub fn name(self) -> &'static str {
+        match self {
+            Self::GaugeAgainstPillow => "gauge against pillow",
+            Self::PillowStuck => "pillow stuck",
+            Self::PillowJumps => "pillow jumps",
+            Self::TemperatureRange => "temperature range",
+        }
+    }
+
+    /// The rule in words.
+    pub fn words(self) -> String {
+        match self {
+            Self::GaugeAgainstPillow => format!(
+                "On days of {COLD_C} degC and colder, what the pillow gained over what the gauge caught differs from the site's \
+                 median year by more than a factor of {GAUGE_FACTOR}"
+            ),
+            Self::PillowStuck => format!(
+                "The pillow reads the same for {FLAT_DAYS} days or more, while {FLAT_MM} mm or more fall on days of {COLD_C} degC \
+                 and colder"
+            ),
+            Self::PillowJumps => format!(
+                "The pillow rises by {JUMP_MM} mm or more in a day, and by more than twice the precipitation of that day and \
+                 {JUMP_REACH_DAYS} days before and after"
+            ),
+            Self::TemperatureRange => format!(
+                "In the first nine months of the water year, a month's mean daily range of temperature differs from that month's \
+                 median year by more than {RANGE_C} degC and {RANGE_DEVIATIONS} scaled median deviations"
+            ),
+        }
+    }
+}
+
+/// A winter of a site that is left out.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct LeftOut {
+    /// The site.
+    pub site: String,
+    /// The water year.
+    pub water_year: i32,
+    /// By which rule.
+    pub rule: Rule,
+    /// What was found, in words.
+    pub found: String,
+}
+
+/// The winters of all sites that are left out, by site, year and rule; `weather` as the gauge caught it.
+pub fn left_out(sites: &[Site<'_>], weather: &Series) -> Vec<LeftOut> {
+    let of_temperature = odd_ranges(weather);
+    let mut left_out = Vec::new();
+    for site in sites {
+        let years: Vec<SiteYear<'_>> =
+            weather.years.iter().filter_map(|span| SiteYear::of(site, weather, span)).collect();
+        let median_ratio = median_ratio(&years);
+        for year in &years {
+            let found = Rule::EACH.map(|rule| match rule {
+                Rule::GaugeAgainstPillow => median_ratio.and_then(|median| year.unlike_gauge(median)),
+                Rule::PillowStuck => year.stuck(),
+                Rule::PillowJumps => year.jump(),
+                Rule::TemperatureRange => {
+                    let odd =
+                        of_temperature.iter().find(|(water_year, _)| *water_year == year.span.water_year);
+                    odd.map(|(_, found)| found.clone())
+                }
+            });
+            left_out.extend(Rule::EACH.into_iter().zip(found).filter_map(|(rule, found)| {
+                let water_year = year.span.water_year;
+                found.map(|found| LeftOut { site: site.name.to_owned(), water_year, rule, found })
+            }));
+        }
+    }
+    left_out
+}
+
+/// What remains of a site's readings; none where nothing does.
+pub fn without(site: &Site<'_>, left_out: &[LeftOut], weather: &Series) -> Option<Observations> {
+    let gone: Vec<&YearSpan> = weather
+        .years
+        .iter()
+        .filter(|span| left_out.iter().any(|out| out.site == site.name && out.water_year == span.water_year))
+        .collect();
+    let is_gone =
+        |date| gone.iter().any(|span| (span.first..date_of(span.first, span.days + 1)).contains(&date));
+    let mut remaining = site.observations.clone();
+    remaining.states.retain(|state| !is_gone(state.date));
+    (!remaining.states.is_empty()).then_some(remaining)
+}
+
+/// A water year of a site.
+struct SiteYear<'a> {
+    span: &'a YearSpan,
+    weather: YearView<'a>,
+    observed: Vec<Option<f64>>,
+    is_daily: bool,
+}
+
+impl<'a> SiteYear<'a> {
+    fn of(site: &Site<'_>, weather: &'a Series, span: &'a YearSpan) -> Option<Self> {
+        let observed = observed_days(Some(site.observations), span.first, span.days);
+        let is_daily = site.observations.kind == Kind::Pillow;
+        observed.iter().any(Option::is_some).then(|| Self {
+            span,
+            weather: weather.view(span),
+            observed,
+            is_daily,
+        })
+    }
+
+    /// Days with a reading as they begin and as they end: the change belongs to the day.
+    fn changes(&self) -> impl Iterator<Item = (usize, f64, f64)> + '_ {
+        let pairs = self.observed.windows(2).enumerate();
+        pairs.filter(|_| self.is_daily).filter_map(|(day, pair)| Some((day, pair[0]?, pair[1]?)))
+    }
+
+    /// What the pillow gained on cold days over what the gauge caught on them; none where little fell.
+    fn ratio(&self) -> Option<f64> {
+        let cold = self.changes().filter(|(day, _, _)| self.weather.mean_c[*day] <= COLD_C);
+        let (gained_mm, fell_mm) = cold.fold((0.0, 0.0), |(gained, fell), (day, before, after)| {
+            (gained + (after - before), fell + self.weather.precipitation_mm[day])
+        });
+        (fell_mm >= LEAST_COLD_MM).then(|| gained_mm / fell_mm)
+    }
+
+    fn unlike_gauge(&self, median: f64) -> Option<String> {
+        let ratio = self.ratio()?;
+        let is_alike = (median / GAUGE_FACTOR..=median * GAUGE_FACTOR).contains(&ratio);
+        (!is_alike).then(|| format!("{ratio:.2} where the median year has {median:.2}"))
+    }
+
+    fn stuck(&self) -> Option<String> {
+        let (mut days, mut fell_mm) = (0, 0.0);
+        for (day, before, after) in self.changes() {
+            if before > SNOW_MM && after == before {
+                days += 1;
+                if self.weather.mean_c[day] <= COLD_C {
+                    fell_mm += self.weather.precipitation_mm[day];
+                }
+                if days >= FLAT_DAYS && fell_mm >= FLAT_MM {
+                    let date = date_of(self.span.first, day + 1);
+                    return Some(format!("{before:.0} mm for {days} days to {date}, {fell_mm:.0} mm fell"));
+                }
+            } else {
+                (days, fell_mm) = (0, 0.0);
+            }
+        }
+        None
+    }
+
+    fn jump(&self) -> Option<String> {
+        self.changes().find_map(|(day, before, after)| {
+            let around = day.saturating_sub(JUMP_REACH_DAYS)..(day + JUMP_REACH_DAYS + 1).min(self.span.days);
+            let fell_mm: f64 = self.weather.precipitation_mm[around].iter().sum();
+            let rise_mm = after - before;
+            (rise_mm >= JUMP_MM && rise_mm > 2.0 * fell_mm).then(|| {
+                format!("{rise_mm:.0} mm on {}, {fell_mm:.0} mm fell", date_of(self.span.first, day + 1))
+            })
+        })
+    }
+}
+
+fn median_ratio(years: &[SiteYear<'_>]) -> Option<f64> {
+    let ratios: Vec<f64> = years.iter().filter_map(SiteYear::ratio).collect();
+    (ratios.len() >= LEAST_YEARS).then(|| median(ratios)).filter(|median| *median > 0.0)
+}
+
+/// Water years in which a month's daily range is not that of the place, and the first such month in words. Records of mean
+/// temperature alone have no range.
+fn odd_ranges(weather: &Series) -> Vec<(i32, String)> {
+    let by_year: Vec<[Option<f64>; 12]> =
+        weather.years.iter().map(|span| mean_ranges(weather.view(span))).collect();
+    let usual: Vec<Option<[f64; 2]>> = (0..12)
+        .map(|month| {
+            let ranges: Vec<f64> = by_year.iter().filter_map(|year| year[month]).collect();
+            (ranges.len() >= LEAST_YEARS).then(|| {
+                let middle = median(ranges.clone());
+                [middle, NORMAL_SCALE * median(ranges.iter().map(|range| (range - middle).abs()).collect())]
+            })
+        })
+        .collect();
+    let odd = weather.years.iter().zip(&by_year).filter_map(|(span, ranges)| {
+        let months = (0..MONTHS_ASKED).map(|ahead| (span.first.month0() as usize + ahead) % 12);
+        let found = months.filter_map(|month| Some((month, ranges[month]?, usual[month]?))).find(
+            |(_, range, [middle, deviation])| {
+                let off = (range - middle).abs();
+                off > RANGE_C && off > RANGE_DEVIATIONS * deviation
+            },
+        );
+        found.map(|(month, range, [middle, _])| {
+            (
+                span.water_year,
+                format!("{range:.1} degC in month {}, {middle:.1} in the median year", month + 1),
+            )
+        })
+    });
+    odd.collect()
+}
+
+/// Mean daily range by month, January first, degC.
+fn mean_ranges(year: YearView<'_>) -> [Option<f64>; 12] {
+    let mut sums = [(0.0, 0.0); 12];
+    for (month, half_range_c) in year.month.iter().zip(year.half_range_c) {
+        let (sum_c, days) = &mut sums[usize::from(*month)];
+        *sum_c += 2.0 * half_range_c;
+        *days += 1.0;
+    }
+    sums.map(|(sum_c, days)| (days > 0.0).then(|| sum_c / days))
+}
+
+/// Of an even number of values the mean of the two in the middle.
+fn median(mut values: Vec<f64>) -> f64 {
+    values.sort_by(f64::total_cmp);
+    let middle = values.len() / 2;
+    if values.len().is_multiple_of(2) { (values[middle - 1] + values[middle]) / 2.0 } else { values[middle] }
+}
+
+#[cfg(test)]
+mod tests;
