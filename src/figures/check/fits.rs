@@ -71,6 +71,8 @@ impl Made {
             kling_gupta: None,
             skill_above_mean: None,
             peak: comparison.peak,
+            peak_standard_error_pct: None,
+            survey_standard_error_pct: None,
             survey: comparison.surveys[0].bias,
             melt_out: comparison.melt_out,
             survey_error_by_winter_mm_per_c: Some(Slope { pairs: 8, slope, standard_error }),
