@@ -6,6 +6,7 @@
 mod comparison;
 mod day_of_year_mean;
 mod held_against;
+mod hill;
 #[cfg(test)]
 mod invented;
 mod judged;
@@ -14,7 +15,9 @@ mod not_seen;
 mod objective;
 mod parameter;
 mod place;
+mod principal_axes;
 mod profile;
+mod refine;
 mod run;
 mod scores;
 mod search;
@@ -36,7 +39,8 @@ pub use place::{ObservedAt, Place, PlaceDays, PlaceYear, place_years};
 pub use profile::{FLAT_PROFILE, Profile};
 pub use run::{FitEnd, FitResult, Fitted, Follow, LEAST_WINTERS, Plan, Stage, Unfollowed, fit};
 pub use scores::{KlingGupta, Pair, kling_gupta, nash_sutcliffe};
-pub use search::{Asked, Found, Search, refine, search};
+pub use refine::refine;
+pub use search::{Asked, Found, Search, search};
 pub use site::{Model, Site, compare, site_lanes};
 pub use slope::Slope;
 pub use space::{Bounded, Space, Value};

@@ -1,6 +1,7 @@
 //! Profiles: how much a fit loses as one parameter is held away from its best, the others refined beside it.
 
-use super::search::{Asked, Found, refine};
+use super::refine::refine;
+use super::search::{Asked, Found};
 use super::space::Space;
 use serde::Serialize;
 
@@ -23,7 +24,7 @@ pub struct Profile {
 }
 
 /// Profiles of all parameters about the best point; at each held value the other parameters begin at the best and are refined
-/// by the compass search, not searched for anew.
+/// by the climb, not searched for anew.
 ///
 /// # Errors
 /// What `values` says, which is asked for points of the whole space.

@@ -1,5 +1,4 @@
-//! The search: dynamically dimensioned search (Tolson & Shoemaker 2007), many searchers in lock-step, then a compass search
-//! around what each has found.
+//! The search: dynamically dimensioned search (Tolson & Shoemaker 2007), many searchers in lock-step.
 //!
 //! A search by itself is sequential; here a step asks every searcher for one point, so that all points of a step can be
 //! tried side by side. What a searcher does hangs on its own stream of random numbers and its own values alone.
@@ -11,10 +10,6 @@ use rand::rngs::ChaCha8Rng;
 
 /// A change has this standard deviation, a share of the parameter's range (Tolson & Shoemaker 2007).
 const STEP: f64 = 0.2;
-/// The compass search begins with steps of this share of the range, halves them where none is better,
-const FIRST_STEP: f64 = 0.05;
-/// and ends below this.
-const LAST_STEP: f64 = 0.001;
 
 /// A search over the unit cube, each searcher with points and values of its own.
 #[derive(Debug, Clone, PartialEq)]
@@ -83,51 +78,6 @@ pub fn search<E>(
         }
     }
     Ok(found)
-}
-
-/// Refines what was found: each searcher tries a step up and down in every parameter, moves to the best of them that is
-/// better, and halves its step where none is.
-///
-/// # Errors
-/// What `values` says.
-pub fn refine<E>(
-    found: &mut [Found],
-    mut values: impl FnMut(&[Asked]) -> Result<Vec<f64>, E>,
-) -> Result<(), E> {
-    let mut steps = vec![FIRST_STEP; found.len()];
-    loop {
-        let asked: Vec<Asked> = found
-            .iter()
-            .zip(&steps)
-            .enumerate()
-            .filter(|(_, (_, step))| **step >= LAST_STEP)
-            .flat_map(|(searcher, (found, step))| neighbours(searcher, &found.point, *step))
-            .collect();
-        if asked.is_empty() {
-            return Ok(());
-        }
-        let before: Vec<f64> = found.iter().map(|found| found.value).collect();
-        for (asked, value) in asked.iter().zip(values(&asked)?) {
-            let found = &mut found[asked.searcher];
-            if value > found.value {
-                *found = Found { point: asked.point.clone(), value };
-            }
-        }
-        for ((step, found), before) in steps.iter_mut().zip(found.iter()).zip(before) {
-            if found.value <= before {
-                *step /= 2.0;
-            }
-        }
-    }
-}
-
-fn neighbours(searcher: usize, point: &[f64], step: f64) -> impl Iterator<Item = Asked> {
-    let moved = move |at: usize, by: f64| {
-        let mut point = point.to_vec();
-        point[at] = (point[at] + by).clamp(0.0, 1.0);
-        Asked { searcher, point }
-    };
-    (0..point.len()).flat_map(move |at| [moved(at, step), moved(at, -step)])
 }
 
 /// The chance with which a parameter changes in a step, from 1, of so many.

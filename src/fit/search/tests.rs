@@ -109,20 +109,3 @@ fn bounds_turn_back() {
         assert!((turned_back(value) - expected).abs() < 1e-12, "{value}");
     }
 }
-
-/// The top of a hill away from the starts, found to the last step in each coordinate; a searcher hangs on itself alone.
-#[test]
-fn refinement_goes_to_the_top() {
-    let value = |asked: &Asked| {
-        let target = [0.2, 0.8][asked.searcher];
-        -asked.point.iter().map(|x| (x - target) * (x - target)).sum::<f64>()
-    };
-    let start =
-        |searcher| Found { point: vec![0.5; 3], value: value(&Asked { searcher, point: vec![0.5; 3] }) };
-    let mut found = [start(0), start(1)];
-    let result = refine(&mut found, |asked| Ok::<_, Infallible>(asked.iter().map(value).collect()));
-    assert_eq!(result, Ok(()));
-    for (found, target) in found.iter().zip([0.2, 0.8]) {
-        assert!(found.point.iter().all(|x| (x - target).abs() < 2.0 * LAST_STEP), "{:?}", found.point);
-    }
-}
