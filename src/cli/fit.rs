@@ -73,6 +73,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         objective: scenario.fit.objective,
         starts: scenario.fit.starts,
         evaluations: scenario.fit.evaluations,
+        sets: scenario.fit.parameter_sets,
         seed: scenario.seed,
     };
     let (result, pace) = in_pool(shared, || {

@@ -18,7 +18,12 @@ pub(super) fn day(month: u32, day: u32) -> MonthDay {
 
 /// Years of a cold station: a wave with noise, a storm every few days, each year warmer or colder than the last.
 pub(super) fn weather(years: i32) -> Series {
-    let mut random = crate::perturb::search_stream(77, 0);
+    weather_by(77, years)
+}
+
+/// Other years of that station.
+pub(super) fn weather_by(seed: u64, years: i32) -> Series {
+    let mut random = crate::perturb::search_stream(seed, 0);
     let starts = WaterYearStart(day(10, 1));
     let mut series = Series::default();
     for water_year in 2001..2001 + years {

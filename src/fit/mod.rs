@@ -5,6 +5,7 @@
 
 mod comparison;
 mod day_of_year_mean;
+mod dispersed;
 mod held_against;
 mod hill;
 #[cfg(test)]
@@ -18,6 +19,7 @@ mod place;
 mod principal_axes;
 mod profile;
 mod refine;
+mod resampled_winters;
 mod run;
 mod scores;
 mod search;
@@ -25,8 +27,10 @@ mod site;
 mod slope;
 mod space;
 mod splits;
+mod student;
 mod sums;
 mod trials;
+mod uncertainty;
 mod year;
 
 pub use comparison::{Bias, Comparison, DateError, SurveyBias};
@@ -37,13 +41,14 @@ pub use objective::Objective;
 pub use parameter::{PARAMETERS, Parameter, Parameters};
 pub use place::{ObservedAt, Place, PlaceDays, PlaceYear, place_years};
 pub use profile::{FLAT_PROFILE, Profile};
+pub use refine::refine;
 pub use run::{FitEnd, FitResult, Fitted, Follow, LEAST_WINTERS, Plan, Stage, Unfollowed, fit};
 pub use scores::{KlingGupta, Pair, kling_gupta, nash_sutcliffe};
-pub use refine::refine;
 pub use search::{Asked, Found, Search, search};
 pub use site::{Model, Site, compare, site_lanes};
 pub use slope::Slope;
 pub use space::{Bounded, Space, Value};
 pub use splits::{Split, Winter, winters_of};
 pub use trials::{Trial, Trials};
+pub use uncertainty::{Interval, ParameterSet, Uncertainty};
 pub use year::{ComparedYear, DayPair, SurveyPair};

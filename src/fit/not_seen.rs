@@ -63,6 +63,7 @@ mod tests {
             objective: Objective::NashSutcliffe,
             starts: 1,
             evaluations: 4,
+            sets: 2,
             seed: 3,
         };
         let result = fit(&plan, &mut Unfollowed).expect("seven winters");

@@ -6,10 +6,12 @@ use super::objective::Objective;
 use super::parameter::Parameters;
 use super::profile::{Profile, profiles};
 use super::refine::refine;
+use super::resampled_winters::resampled_winters;
 use super::search::{Asked, Found, Search, search};
 use super::space::{Bounded, Space, Value};
 use super::splits::{Split, Winter, winters_of};
 use super::trials::{Trial, Trials};
+use super::uncertainty::{RESAMPLES, Uncertainty, uncertainty};
 use crate::snow::OpenLedger;
 use serde::Serialize;
 use thiserror::Error;
@@ -32,7 +34,9 @@ pub struct Plan<'a> {
     pub starts: usize,
     /// Sets of parameters that each search tries.
     pub evaluations: usize,
-    /// Seed of the searches.
+    /// Sets of parameters that are handed on, the best among them, at most.
+    pub sets: usize,
+    /// Seed of the searches, and of the winters that are drawn anew.
     pub seed: u64,
 }
 
@@ -63,6 +67,8 @@ pub enum Stage {
     Profiles,
     /// The same as the first without parameters that are not identified.
     Again,
+    /// Fits to winters drawn anew.
+    OtherWinters,
 }
 
 /// Why a fit has no result.
@@ -116,6 +122,8 @@ pub struct FitResult {
     pub profiles: Vec<Profile>,
     /// Keys that the snow does not identify: they stay at the scenario's values.
     pub not_identified: Vec<&'static str>,
+    /// How far other winters might have led the fit on all years.
+    pub uncertainty: Uncertainty,
     /// Sets of parameters that were tried.
     pub tried: usize,
 }
@@ -127,6 +135,8 @@ pub struct FitResult {
 pub fn fit(plan: &Plan<'_>, follow: &mut dyn Follow) -> Result<FitResult, FitEnd> {
     let winters = winters(plan)?;
     let splits = Split::EACH.map(|split| winters_of(split, &winters)).to_vec();
+    let of_splits = splits.iter().map(|is_in| is_in.iter().copied().map(u32::from).collect());
+    let choices = of_splits.chain(resampled_winters(&winters, RESAMPLES, plan.seed)).collect();
     let held = plan.held;
     let trials = Trials::new(
         held.sites,
@@ -134,7 +144,7 @@ pub fn fit(plan: &Plan<'_>, follow: &mut dyn Follow) -> Result<FitResult, FitEnd
         (held.basin.latitude_deg, held.station_m),
         held.season.survey_dates[0],
         plan.objective,
-        splits.clone(),
+        choices,
     );
     let mut run = Run { plan, trials, follow, tried: 0 };
     let mut space = Space::new(&plan.stated, &plan.searched);
@@ -147,6 +157,13 @@ pub fn fit(plan: &Plan<'_>, follow: &mut dyn Follow) -> Result<FitResult, FitEnd
         run.follow.begins(Stage::Again);
         found = run.search(&space)?;
     }
+    run.follow.begins(Stage::OtherWinters);
+    let observed = winters.iter().filter(|winter| winter.is_observed).count();
+    let uncertainty = uncertainty(&space, &found[0].best, observed, plan.sets, |asked| {
+        // Behind the splits, of which all winters are the first, stand the resamples.
+        let choice = |place: usize| if place == 0 { 0 } else { Split::EACH.len() + place - 1 };
+        run.values(&space, asked.iter().map(|asked| (choice(asked.searcher), asked.point.as_slice())))
+    })?;
     let tried = run.tried;
     let mut fitted = Vec::with_capacity(found.len());
     for (split, found) in Split::EACH.into_iter().zip(found) {
@@ -173,7 +190,7 @@ pub fn fit(plan: &Plan<'_>, follow: &mut dyn Follow) -> Result<FitResult, FitEnd
     });
     let unfitted = unfitted.collect();
     let Told { profiles, not_identified, .. } = told;
-    Ok(FitResult { winters, fitted, unfitted, profiles, not_identified, tried })
+    Ok(FitResult { winters, fitted, unfitted, profiles, not_identified, uncertainty, tried })
 }
 
 /// The winters of all years in use.
@@ -270,7 +287,7 @@ impl Run<'_, '_> {
         }
     }
 
-    /// The objective of points, each with its split.
+    /// The objective of points, each with its choice of years.
     fn values<'p>(
         &mut self,
         space: &Space,
@@ -280,7 +297,7 @@ impl Run<'_, '_> {
             return Err(FitEnd::Stopped);
         }
         let trials: Vec<Trial> =
-            points.map(|(split, point)| Trial { parameters: space.at(point), split }).collect();
+            points.map(|(choice, point)| Trial { parameters: space.at(point), choice }).collect();
         let values = self.trials.values(&trials)?;
         self.tried += trials.len();
         self.follow.tried(trials.len());

@@ -1,4 +1,4 @@
-//! Trials: many sets of parameters run side by side where snow was observed, each held against the years of its split.
+//! Trials: many sets of parameters run side by side where snow was observed, each held against the years of its choice.
 
 use super::held_against::{ObservedYear, observed_years};
 use super::objective::Objective;
@@ -15,13 +15,13 @@ use rayon::prelude::*;
 /// Trials that run side by side; more of them would leave the second-level cache, fewer would leave vectors empty.
 const SIDE_BY_SIDE: usize = 32;
 
-/// A set of parameters, and the split whose years it is held against.
+/// A set of parameters, and the choice of years that it is held against.
 #[derive(Debug, Clone)]
 pub struct Trial {
     /// The parameters.
     pub parameters: Parameters,
-    /// The split, by its place in the list.
-    pub split: usize,
+    /// The choice, by its place in the list.
+    pub choice: usize,
 }
 
 /// What trials are run on.
@@ -32,22 +32,23 @@ pub struct Trials<'a> {
     latitude_deg: f64,
     station_m: f64,
     objective: Objective,
-    /// `[split][year]`: whether the year is one of the split's.
-    splits: Vec<Vec<bool>>,
+    /// `[choice][year]`: how many times the year counts.
+    choices: Vec<Vec<u32>>,
 }
 
 impl<'a> Trials<'a> {
-    /// Trials at some sites, on the record as the gauge caught it.
+    /// Trials at some sites, on the record as the gauge caught it, held against choices of its years, `[choice][year]`: how many
+    /// times each year counts.
     pub fn new(
         sites: &'a [Site<'a>],
         weather: &'a Series,
         (latitude_deg, station_m): (f64, f64),
         survey: MonthDay,
         objective: Objective,
-        splits: Vec<Vec<bool>>,
+        choices: Vec<Vec<u32>>,
     ) -> Self {
         let observed = sites.iter().map(|site| observed_years(site, weather, survey)).collect();
-        Self { sites, observed, weather, latitude_deg, station_m, objective, splits }
+        Self { sites, observed, weather, latitude_deg, station_m, objective, choices }
     }
 
     /// The objective of every trial, in their order; the mean over the sites that have one, and minus infinity where none has.
@@ -69,7 +70,7 @@ impl<'a> Trials<'a> {
             for (place, (sums, observed)) in sums.iter_mut().zip(&self.observed).enumerate() {
                 let of_year = sums_of_year(block, lanes.column(0, place), trials.len(), &observed[year]);
                 for ((sums, of_year), trial) in sums.iter_mut().zip(of_year).zip(trials) {
-                    if self.splits[trial.split][year] {
+                    for _ in 0..self.choices[trial.choice][year] {
                         *sums += of_year;
                     }
                 }

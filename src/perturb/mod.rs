@@ -20,7 +20,7 @@ pub use level::{MonthlyChange, PrecipitationChange, StatedChange, Warming};
 pub use markov_gamma::MarkovGamma;
 pub use mean_change::{MeanChange, mean_change_factor};
 pub use recipe::{GeneratorChoice, Recipe};
-pub use stream::{resampling_stream, search_stream, stream};
+pub use stream::{resampling_stream, search_stream, stream, winters_stream};
 pub use temperature_held::TemperatureHeld;
 pub use year_blocks::YearBlocks;
 

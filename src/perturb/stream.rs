@@ -33,6 +33,11 @@ pub fn search_stream(seed: u64, searcher: usize) -> ChaCha8Rng {
     numbered(seed, (1 << 36) + searcher as u64)
 }
 
+/// The stream that draws the winters of a fit anew: beyond all others.
+pub fn winters_stream(seed: u64) -> ChaCha8Rng {
+    numbered(seed, 1 << 37)
+}
+
 fn numbered(seed: u64, stream: u64) -> ChaCha8Rng {
     let mut random = ChaCha8Rng::seed_from_u64(seed);
     random.set_stream(stream);

@@ -5,6 +5,7 @@ mod figures;
 mod judged;
 mod left_out;
 mod page;
+mod parameter_sets;
 mod parameters;
 mod tables;
 mod values;
@@ -27,6 +28,8 @@ use std::fmt::Write;
 
 /// The file of fitted parameters.
 pub(super) const PARAMETERS_FILE: &str = "parameters.toml";
+/// The file of sets of parameters.
+const SETS_FILE: &str = "parameter-sets.csv";
 
 /// A fit, and how it came about.
 pub struct FitReport<'a> {
@@ -100,6 +103,7 @@ pub fn fit_files(report: &FitReport<'_>) -> serde_json::Result<Vec<ReportFile>> 
     })?;
     let mut files = vec![
         (PARAMETERS_FILE.to_owned(), parameters::parameters_toml(report)),
+        (SETS_FILE.to_owned(), parameter_sets::parameter_sets_csv(report)),
         ("fit.html".to_owned(), page::page(report, &drawn)),
         ("fit.json".to_owned(), document),
         ("tables/fit-scores.csv".to_owned(), tables::scores(report)),
@@ -129,7 +133,11 @@ pub fn fit_in_words(report: &FitReport<'_>) -> String {
     let result = report.result;
     let mut text = String::new();
     for value in &result.fitted[0].values {
-        let _ = writeln!(text, "  {} = {}", value.key, rounded(value.value));
+        let interval = result.uncertainty.intervals.iter().find(|interval| interval.key == value.key);
+        let ends = interval.map_or(String::new(), |interval| {
+            format!(" ({} to {})", fixed(interval.low, 2), fixed(interval.high, 2))
+        });
+        let _ = writeln!(text, "  {} = {}{ends}", value.key, rounded(value.value));
     }
     if !result.not_identified.is_empty() {
         let _ =

@@ -14,12 +14,15 @@ pub struct FitTyped {
     pub starts: usize,
     /// Sets of parameters that each search tries.
     pub evaluations: usize,
+    /// Sets of parameters that are handed on.
+    pub parameter_sets: usize,
     /// What is made as large as it can be.
     pub objective: Objective,
 }
 
 const STARTS: u64 = 8;
 const EVALUATIONS: u64 = 1000;
+const PARAMETER_SETS: u64 = 20;
 const OBJECTIVES: [(&str, Objective); 2] =
     [("nash-sutcliffe", Objective::NashSutcliffe), ("season", Objective::Season)];
 
@@ -29,6 +32,7 @@ impl Default for FitTyped {
             searched: usual(),
             starts: STARTS as usize,
             evaluations: EVALUATIONS as usize,
+            parameter_sets: PARAMETER_SETS as usize,
             objective: Objective::NashSutcliffe,
         }
     }
@@ -47,9 +51,10 @@ pub(super) fn read(mut section: Section<'_>, of: Option<&Parameters>) -> Option<
     }
     let starts = section.whole_or("starts", STARTS, 1..=64) as usize;
     let evaluations = section.whole_or("evaluations", EVALUATIONS, 10..=100_000) as usize;
+    let parameter_sets = section.whole_or("parameter_sets", PARAMETER_SETS, 1..=100) as usize;
     let objective = section.choice_or("objective", &OBJECTIVES, "nash-sutcliffe");
     section.finish();
-    Some(FitTyped { searched: searched?, starts, evaluations, objective: objective? })
+    Some(FitTyped { searched: searched?, starts, evaluations, parameter_sets, objective: objective? })
 }
 
 fn read_parameters(section: &mut Section<'_>, of: Option<&Parameters>) -> Option<Vec<Bounded>> {

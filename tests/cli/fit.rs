@@ -11,6 +11,7 @@ parameters = ["snow.degree_day_factor_mm_per_c_day.highest", "snow.melt_base_c"]
 bounds = { snow.melt_base_c = [-1, 3] }
 starts = 2
 evaluations = 10
+parameter_sets = 6
 "#;
 
 const BOUNDS: &str = r"
@@ -48,6 +49,7 @@ fn what_was_fitted_is_handed_on_by_one_line() {
     assert_eq!((again.status, again.stderr.as_str()), (0, ""));
     for file in [
         "parameters.toml",
+        "parameter-sets.csv",
         "fit.json",
         "fit.html",
         "tables/fit-scores.csv",
@@ -67,6 +69,15 @@ fn what_was_fitted_is_handed_on_by_one_line() {
     let page = basin.read("again/fit.html");
     assert!(page.contains("A planning aid. Not for flood forecasting"), "the page carries the cautions");
     assert_eq!(page.matches("<figure>").count(), 4, "each figure stands on the page, too");
+
+    // The first set is the fit itself, as it stands in the other file.
+    let sets = basin.read("again/parameter-sets.csv");
+    let rows: Vec<Vec<&str>> = sets.lines().map(|line| line.split(',').collect()).collect();
+    assert_eq!((rows.len(), rows[0].len()), (7, 3), "{sets}");
+    let parameters = basin.read("again/parameters.toml");
+    for (key, value) in rows[0].iter().zip(&rows[1]).take(2) {
+        assert!(parameters.contains(&format!("{key} = {value}\n")), "{key} = {value}: {parameters}");
+    }
 
     let of_all = &json(&basin, "again/fit.json")["result"]["fitted"][0]["on_own"][0];
     let with = plain.replacen("[snow]\n", "[snow]\nfitted = \"again/parameters.toml\"\n", 1);

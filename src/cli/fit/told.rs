@@ -51,6 +51,7 @@ impl Follow for Told<'_> {
             Stage::Again => {
                 ("searching again without those that the snow does not tell", Some(self.searched))
             }
+            Stage::OtherWinters => ("fitting to winters drawn anew: how far others might have led", None),
         };
         self.progress.stage(words);
         self.begins_bar(self.progress.bar_of(SETS, total));

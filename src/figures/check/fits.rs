@@ -8,7 +8,7 @@ use crate::basin::{GradientForm, PrecipitationGradient, TemperatureGradient};
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::fit::{
     Bounded, Comparison, FitResult, Fitted, Judged, Objective, PARAMETERS, Parameters, Profile, Slope, Split,
-    SurveyPair, Winter,
+    SurveyPair, Uncertainty, Winter,
 };
 use crate::observed::Kind;
 use crate::snow::{DegreeRule, GaugeMultiplier, SnowParams};
@@ -115,6 +115,7 @@ impl Made {
             unfitted: Vec::new(),
             not_identified: flat.collect(),
             profiles,
+            uncertainty: Uncertainty { resamples: 0, intervals: Vec::new(), sets: Vec::new() },
             tried: 1,
         }
     }

@@ -30,6 +30,7 @@ fn fitted(evaluations: usize, seed: u64, keys: &[&str]) -> (Vec<Value>, FitResul
         objective: Objective::NashSutcliffe,
         starts: 2,
         evaluations,
+        sets: 5,
         seed,
     };
     let result = fit(&plan, &mut Unfollowed).expect("eight winters");
@@ -84,6 +85,7 @@ fn a_fit_that_is_told_to_stop_stops() {
         objective: Objective::Season,
         starts: 1,
         evaluations: 2,
+        sets: 5,
         seed: 1,
     };
     assert_eq!(fit(&plan(&weather), &mut Stops), Err(FitEnd::Stopped));

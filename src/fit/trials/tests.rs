@@ -19,10 +19,10 @@ fn a_trial_is_scored_as_a_comparison() {
     let keys = ["snow.melt_base_c", "snow.rain_snow.half_snow_at_c", "weather.gauge_multiplier.snow"];
     let space = Space::new(&stated(), &usual(&keys));
     let points = [[0.1, 0.2, 0.3], [0.9, 0.5, 0.8], [0.4, 0.9, 0.1]];
-    let trials = points.map(|point| Trial { parameters: space.at(&point), split: 0 });
+    let trials = points.map(|point| Trial { parameters: space.at(&point), choice: 0 });
     let in_split = [true, false, true, true, false, true];
     let value = |objective| {
-        let splits = vec![in_split.to_vec()];
+        let splits = vec![in_split.map(u32::from).to_vec()];
         let at = (basin.latitude_deg, STATION_M);
         let run = Trials::new(&sites, &weather, at, day(4, 1), objective, splits);
         run.values(&trials).expect("the ledger closes")
@@ -52,9 +52,9 @@ fn threads_and_neighbours_do_not_show() {
     let sites = [Site { name: "pillow", elevation_m: STATION_M, observations: &seen }];
     let space = Space::new(&stated(), &usual(&["snow.melt_base_c", "weather.gauge_multiplier.snow"]));
     let trials: Vec<Trial> =
-        (0..70).map(|at| Trial { parameters: space.at(&[f64::from(at) / 70.0, 0.5]), split: 0 }).collect();
+        (0..70).map(|at| Trial { parameters: space.at(&[f64::from(at) / 70.0, 0.5]), choice: 0 }).collect();
     let run =
-        Trials::new(&sites, &weather, (40.0, STATION_M), day(4, 1), Objective::Season, vec![vec![true; 3]]);
+        Trials::new(&sites, &weather, (40.0, STATION_M), day(4, 1), Objective::Season, vec![vec![1; 3]]);
     let on = |threads| {
         let pool = rayon::ThreadPoolBuilder::new().num_threads(threads).build().expect("a pool");
         pool.install(|| run.values(&trials)).expect("the ledger closes")

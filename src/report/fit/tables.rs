@@ -33,7 +33,18 @@ pub(super) fn scores(report: &FitReport<'_>) -> Vec<u8> {
 /// One row a parameter.
 pub(super) fn parameters(report: &FitReport<'_>) -> Vec<u8> {
     let mut writer = Writer::from_writer(Vec::new());
-    let names = ["key", "unit", "lowest", "highest", "scenario", "identified", "profile_falls_by"];
+    let names = [
+        "key",
+        "unit",
+        "lowest",
+        "highest",
+        "scenario",
+        "identified",
+        "profile_falls_by",
+        "interval_low",
+        "interval_high",
+        "interval_ends_at_bound",
+    ];
     let splits = report
         .result
         .fitted
@@ -55,6 +66,13 @@ pub(super) fn parameters(report: &FitReport<'_>) -> Vec<u8> {
             yes_or_no(profile.is_identified).to_owned(),
             optional(Some(profile.fall)),
         ];
+        let interval =
+            report.result.uncertainty.intervals.iter().find(|interval| interval.key == profile.key);
+        row.extend([
+            optional(interval.map(|interval| interval.low)),
+            optional(interval.map(|interval| interval.high)),
+            interval.map_or(String::new(), |interval| yes_or_no(interval.is_at_bound)),
+        ]);
         let of_split = report.result.fitted.iter().map(|fitted| bounded.parameter.get(&fitted.parameters));
         row.extend(of_split.map(optional));
         write(&mut writer, &row);
