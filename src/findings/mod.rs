@@ -13,6 +13,7 @@ mod generator_sheet;
 mod measure;
 mod normal;
 mod odds;
+mod parameter_spread;
 mod perennial;
 mod precipitation;
 mod quantile;
@@ -22,6 +23,7 @@ mod resample;
 mod shift;
 mod spread;
 mod temperature_held;
+mod three_way;
 mod through_year;
 mod variance;
 mod yardstick;
@@ -44,6 +46,7 @@ pub use normal::{
     CLASS_LIMITS_PCT, LevelPercents, MedianSwe, NormalQuestions, PercentOfMedian, UNSTABLE_BELOW_SHARE,
     percent_of_median,
 };
+pub use parameter_spread::{LevelBySet, MeasureBySet, Mover, OverSets, ParameterSpread, SetRuns, Weighed};
 pub use perennial::PerennialBand;
 pub use precipitation::{RecordPrecipitation, YearPrecipitation};
 pub use quantile::{quantile, sorted};
@@ -55,6 +58,7 @@ pub use resample::{Estimate, Resamples};
 pub use shift::{Shift, percent_change};
 pub use spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
 pub use temperature_held::{HeldLevel, TemperatureHeldSpread};
+pub use three_way::{ThreeWay, ThreeWayShares};
 pub use through_year::{LevelThroughYear, SweThroughYear};
 pub use variance::{TwoWay, VarianceShares};
 pub use yardstick::{TIMES_ASSUMED, Yardstick, YardstickLevel};

@@ -77,7 +77,8 @@ pub fn signal_to_spread(
     Some((Estimate::new(value, resampled.iter().copied()), resampled))
 }
 
-fn over_half(shift: f64, half: f64) -> Option<f64> {
+/// The size of a shift over half a spread; none where that is none.
+pub(super) fn over_half(shift: f64, half: f64) -> Option<f64> {
     (half > LEAST_SPREAD && half.is_finite()).then(|| shift.abs() / half)
 }
 
