@@ -10,7 +10,10 @@ use crate::basin::{Basin, GroundStated};
 use crate::defaults::DefaultInForce;
 use crate::fault::Fault;
 use crate::observed::Observations;
-use crate::scenario::{Document, Draft, FITTED_KEY, Fitted, ObservedTyped, read_fitted};
+use crate::scenario::{
+    Document, Draft, FITTED_KEY, Fitted, ObservedTyped, PARAMETER_SETS_KEY, ParameterSets, read_fitted,
+    read_parameter_sets,
+};
 use crate::snow::{StationPhase, correct_catch};
 use crate::table::Encoding;
 use crate::units::cubic_hectometres;
@@ -28,6 +31,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
     }
     let mut faults = std::mem::take(&mut draft.faults);
     let fitted = take(read_fitted_of(&mut draft, &document, &folder), &mut faults).flatten();
+    let parameter_sets = take(read_parameter_sets_of(&draft, &document, &folder), &mut faults).flatten();
     let bands = take(read_bands_of(&draft, &folder), &mut faults).flatten();
     let record = take(read_record_of(&draft, &folder), &mut faults).flatten();
     let observed = read_observed_of(&draft, &folder, &mut faults);
@@ -35,6 +39,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
         let is_read = match key.as_str() {
             key if key.starts_with("basin.") => draft.hypsometry.is_some(),
             FITTED_KEY => true,
+            PARAMETER_SETS_KEY => draft.parameter_sets.is_some(),
             "weather.file" => draft.record_source.is_some() && draft.season.is_some(),
             of_site => draft.observed.iter().flatten().any(|site| of_site == file_key(site)),
         };
@@ -104,6 +109,9 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             unlikely.extend(of_generator);
             let (fitted, fitted_file) = fitted.unzip();
             files.extend(fitted_file);
+            let (parameter_sets, sets_file) = parameter_sets.unzip();
+            files.extend(sets_file);
+            unlikely.extend(parameter_sets.iter().filter_map(ParameterSets::unlikely));
             let mut defaults = draft.defaults;
             note_baseline_years(&baseline_years, &mut defaults);
             let mut ready = Ready {
@@ -120,6 +128,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 defaults,
                 observed: observations,
                 fitted,
+                parameter_sets,
                 files,
                 stem,
             };
@@ -218,6 +227,21 @@ fn read_fitted_of(
     let file = read_data(folder, &name, FITTED_KEY, Encoding::Utf8).map_err(|fault| vec![fault])?;
     let values = read_fitted(&file.name, &file.text)?;
     Ok(draft.take_fitted(&name, &values, document).map(|fitted| (fitted, file)))
+}
+
+/// Reads the file of sets of parameters that a study runs beside its own.
+fn read_parameter_sets_of(
+    draft: &Draft,
+    document: &Document<'_>,
+    folder: &Path,
+) -> Result<Option<(ParameterSets, InputFile)>, Vec<Fault>> {
+    let Some(typed) = &draft.parameter_sets else {
+        return Ok(None);
+    };
+    let file =
+        read_data(folder, &typed.file, PARAMETER_SETS_KEY, Encoding::Utf8).map_err(|fault| vec![fault])?;
+    let sets = read_parameter_sets(&file.name, &file.text)?;
+    Ok(draft.parameter_sets(&sets, document)?.map(|sets| (sets, file)))
 }
 
 fn file_key(site: &ObservedTyped) -> String {

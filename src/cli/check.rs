@@ -71,6 +71,7 @@ fn describe<'a>(
         detrended: ready.detrended.as_ref(),
         sites: ready.sites(),
         fitted: ready.fitted_from(),
+        parameter_sets: ready.sets_from(),
         season: &scenario.season,
         snow: &scenario.snow,
         levels_c: &scenario.warming.levels_c,

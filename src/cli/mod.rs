@@ -14,6 +14,7 @@ mod last_words;
 mod level_groups;
 mod output;
 mod own_years;
+mod parameter_sets;
 mod pool;
 mod progress;
 mod ready;

@@ -3,22 +3,23 @@
 use super::arguments::Shared;
 use super::failure::Failure;
 use super::input::InputFile;
-use crate::baseline::{Baseline, BaselineYears, Detrended};
+use crate::baseline::{Baseline, BaselineYears, Detrended, detrend};
 use crate::basin::Basin;
 use crate::defaults::DefaultInForce;
 use crate::ensemble::{BandClimate, WinterMonths, band_climates, snow_that_piles_up};
 use crate::fault::Unlikely;
-use crate::fit::{Comparison, Model, Site, compare};
+use crate::fit::{Comparison, Model, Parameters, Site, compare};
 use crate::observed::Observations;
 use crate::perturb::{MonthlyChange, Recipe};
-use crate::report::{FittedFrom, Input, Origin, Reader};
-use crate::scenario::{Fitted, Scenario};
+use crate::report::{FittedFrom, Input, Origin, Reader, SetsFrom};
+use crate::scenario::{Fitted, ParameterSets, Scenario};
 use crate::season::Measures;
-use crate::snow::{LaneSpec, Lanes, OpenLedger, StationPhase};
+use crate::snow::{LaneSpec, Lanes, OpenLedger, StationPhase, correct_catch};
 use crate::weather::{Record, Series};
 use std::path::Path;
 
 /// What a command works with.
+#[derive(Clone)]
 pub(super) struct Ready {
     pub scenario: Scenario,
     pub basin: Basin,
@@ -42,7 +43,9 @@ pub(super) struct Ready {
     pub observed: Vec<Observations>,
     /// What is in force from a file of fitted parameters.
     pub fitted: Option<Fitted>,
-    /// The scenario, the bands, the weather, the sites, the file of fitted parameters, as read.
+    /// Sets of parameters that a study runs beside its own.
+    pub parameter_sets: Option<ParameterSets>,
+    /// The scenario, the bands, the weather, the sites, the files of fitted parameters and of sets of them, as read.
     pub files: Vec<InputFile>,
     /// The last part of the scenario's name without the ending.
     pub stem: Option<String>,
@@ -70,7 +73,9 @@ impl Ready {
     pub fn origin(&self, command: &str, path: &Path, shared: &Shared) -> Origin {
         let seed = shared.seed.map_or(String::new(), |seed| format!(" --seed {seed}"));
         let of_sites = std::iter::repeat_n("observed_swe", self.observed.len());
-        let roles = ["scenario", "bands", "weather"].into_iter().chain(of_sites).chain(["fitted"]);
+        let fitted = self.fitted.iter().map(|_| "fitted");
+        let sets = self.parameter_sets.iter().map(|_| "parameter_sets");
+        let roles = ["scenario", "bands", "weather"].into_iter().chain(of_sites).chain(fitted).chain(sets);
         let inputs = roles.zip(&self.files).map(|(role, file)| Input {
             role,
             path: file.name.clone(),
@@ -92,6 +97,31 @@ impl Ready {
     pub fn fitted_from(&self) -> Option<FittedFrom<'_>> {
         let Fitted { file, taken, left } = self.fitted.as_ref()?;
         Some(FittedFrom { file, taken, left })
+    }
+
+    /// What is run beside the study's own parameters.
+    pub fn sets_from(&self) -> Option<SetsFrom<'_>> {
+        let ParameterSets { file, in_file, values, realizations, .. } = self.parameter_sets.as_ref()?;
+        Some(SetsFrom { file, in_file: *in_file, realizations: *realizations, sets: values })
+    }
+
+    /// The same with other parameters: its snow, its basin, and its weather, corrected for catch and detrended anew. What was
+    /// found of the record, and said of the scenario, stays that of the scenario's own.
+    pub fn with(&self, parameters: &Parameters) -> Self {
+        let mut ready = self.clone();
+        let Parameters { snow, gauge, temperature, precipitation } = parameters.clone();
+        ready.scenario.snow = snow;
+        ready.scenario.weather.gauge_multiplier = gauge;
+        ready.basin = Basin { temperature, precipitation, ..ready.basin };
+        ready.weather = self.record.series.clone();
+        let phase = StationPhase::of(&snow, self.scenario.weather.station_elevation_m);
+        correct_catch(&mut ready.weather, gauge, phase);
+        ready.drawn_from = ready.weather.clone();
+        if let Some(year) = self.scenario.weather.detrend_to {
+            // The record was long enough for it before its snow was caught otherwise.
+            detrend(&mut ready.drawn_from, self.scenario.season.survey_dates[0], year);
+        }
+        ready
     }
 
     /// The sites with observed snow.

@@ -4,12 +4,13 @@ use super::break_even::break_even;
 use super::failure::Failure;
 use super::generator_sheet::{generator_sheet, realizations_of_the_sheet};
 use super::level_groups::LevelGroups;
+use super::parameter_sets::{realizations_of_sets, run_sets};
 use super::progress::Progress;
 use super::ready::Ready;
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
-    Findings, OtherChange, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit, Runs,
-    TIMES_ASSUMED, answer,
+    Findings, OtherChange, ParameterSpread, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit,
+    Runs, TIMES_ASSUMED, answer,
 };
 use crate::perturb::{Generator, MeanChange, TemperatureHeld};
 use crate::season::Measures;
@@ -19,7 +20,7 @@ use rayon::prelude::*;
 
 /// Runs every realization under every level; the reference once more with temperatures held, and for every change of
 /// mean precipitation that stands beside the assumed one; and some realizations from each of a number of resampled
-/// records, under every level; and the weather alone of realizations as long as the record, to hold it against that. The
+/// records, and from each set of parameters that the scenario names, under every level; and the weather alone of realizations as long as the record, to hold it against that. The
 /// same streams throughout, so that all differences are paired.
 pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findings, Failure> {
     let scenario = &ready.scenario;
@@ -47,7 +48,8 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let times_assumed: &[f64] = if mean_change_sd_pct > 0.0 { &TIMES_ASSUMED } else { &[] };
     let of_a_record = realizations.count.min(REALIZATIONS_OF_A_RECORD);
     let times = times_assumed.len() as u32 + 2;
-    progress.begins(realizations.count * times + of_a_record + realizations_of_the_sheet(ready));
+    let of_sets = realizations_of_sets(ready);
+    progress.begins(realizations.count * times + of_a_record + of_sets + realizations_of_the_sheet(ready));
 
     let bins = SweBins::of_record(&ready.lanes(&ready.changes()), &ready.drawn_from).map_err(open)?;
     let study = run(&plan, bins, progress).map_err(halted)?;
@@ -77,6 +79,10 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         Refit::of(&seasons, ready.drawn_from.years.len(), &warming.levels_c, warming.reference)
     };
     let refits: Vec<Refit> = of_records.map(refit).collect();
+    let of_sets = match &ready.parameter_sets {
+        Some(sets) => Some(run_sets(ready, sets, &plan, progress).map_err(halted)?),
+        None => None,
+    };
     let generator_sheet = generator_sheet(ready, progress).map_err(halted)?;
 
     // Only a warmer level has something to be made up for.
@@ -98,8 +104,11 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         seed: scenario.seed,
     };
     let findings = answer(&runs, &questions, progress).map_err(halted)?;
+    let parameter_spread = of_sets
+        .and_then(|sets| ParameterSpread::of(&sets, &findings.basin, &warming.levels_c, warming.reference));
     let comparisons = ready.comparisons().map_err(open)?;
-    Ok(Findings { break_even, comparisons, generator: Some(generator_sheet), ..findings })
+    let generator = Some(generator_sheet);
+    Ok(Findings { break_even, parameter_spread, comparisons, generator, ..findings })
 }
 
 /// Watches for the wish to stop alone: runs that are too many and too short to count on a bar.

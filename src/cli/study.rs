@@ -116,6 +116,7 @@ fn describe<'a>(
         season: measures.settings(),
         snow: &scenario.snow,
         fitted: ready.fitted_from(),
+        parameter_sets: ready.sets_from(),
         warming: &scenario.warming.warming,
         mean_change_sd_pct: scenario.realizations.mean_change_sd_pct,
         generator: scenario.realizations.generator,

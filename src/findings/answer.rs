@@ -3,6 +3,7 @@
 use super::break_even::BreakEven;
 use super::generator_sheet::GeneratorSheet;
 use super::measure::{Asked, Found, MeasureFindings};
+use super::parameter_spread::ParameterSpread;
 use super::record::RecordFindings;
 use super::record_range::{RecordRange, Refit};
 use super::resample::Resamples;
@@ -69,6 +70,9 @@ pub struct Findings {
     /// How much more precipitation would make up for the warming. Found by runs of its own: whoever runs them adds it.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub break_even: Option<BreakEven>,
+    /// How far the answer hangs on the parameters. Found by runs of its own, too.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub parameter_spread: Option<ParameterSpread>,
     /// Of the basin mean, one entry a measure, the headline's first.
     pub basin: Vec<MeasureFindings>,
     /// Of each band, from the lowest.
@@ -134,6 +138,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         years,
         swe_through_year: SweThroughYear::of(&study.swe_days, questions.levels_c),
         break_even: None,
+        parameter_spread: None,
         basin,
         bands: bands.collect(),
         comparisons: Vec::new(),

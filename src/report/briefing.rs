@@ -7,6 +7,7 @@ mod generator_sheet;
 mod levels;
 mod normal;
 mod observed;
+mod parameters;
 mod perennial;
 mod record;
 mod snow;
@@ -65,6 +66,7 @@ pub fn briefing_html(
         (perennial::paragraph(study))
         (volumes::section(study, &figures))
         (yardsticks::section(study, answer))
+        (parameters::section(study, answer))
         (record::section(study, &figures))
         (generator_sheet::section(study, &figures))
         (normal::section(study))

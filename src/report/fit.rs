@@ -135,7 +135,7 @@ pub fn fit_in_words(report: &FitReport<'_>) -> String {
     for value in &result.fitted[0].values {
         let interval = result.uncertainty.intervals.iter().find(|interval| interval.key == value.key);
         let ends = interval.map_or(String::new(), |interval| {
-            format!(" ({} to {})", fixed(interval.low, 2), fixed(interval.high, 2))
+            format!(" (90 %: {} to {})", fixed(interval.low, 2), fixed(interval.high, 2))
         });
         let _ = writeln!(text, "  {} = {}{ends}", value.key, rounded(value.value));
     }

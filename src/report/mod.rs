@@ -30,7 +30,7 @@ pub use fit::{FitReport, fit_files, fit_in_words, left_out_lines};
 pub use observed::{comparison_json, comparison_words, observed_tables};
 pub use publish::{PublishError, may_replace, publish};
 pub use reader::Reader;
-pub use study::{FittedFrom, Input, Origin, Record, Study};
+pub use study::{FittedFrom, Input, Origin, Record, SetsFrom, Study};
 pub use summary::{daily_manifest_json, manifest_json, summary_json};
 pub use tables::{ReportFile, tables};
 pub use weather::weather_csv;

@@ -1,5 +1,6 @@
 //! Everything a report is made of, gathered by the command that ran the study.
 
+use super::numbers::counted;
 use super::reader::Reader;
 use crate::baseline::{Baseline, Detrended};
 use crate::basin::{Basin, BeyondStations};
@@ -36,6 +37,8 @@ pub struct Study<'a> {
     pub snow: &'a SnowParams,
     /// What is in force from a file of fitted parameters.
     pub fitted: Option<FittedFrom<'a>>,
+    /// Sets of parameters that were run beside the study's own.
+    pub parameter_sets: Option<SetsFrom<'a>>,
     /// Warming's shape and precipitation.
     pub warming: &'a Warming,
     /// Assumed standard deviation of the change of mean precipitation, percent.
@@ -120,6 +123,38 @@ impl FittedFrom<'_> {
         format!(
             "{taken}. Left, since the scenario states them itself or its rules do not have them: {}.",
             self.left.join(", ")
+        )
+    }
+}
+
+/// Sets of parameters that a study runs beside its own.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct SetsFrom<'a> {
+    /// The file, as the scenario names it.
+    pub file: &'a str,
+    /// Sets in it.
+    pub in_file: usize,
+    /// Realizations of each that is run, the first of the study.
+    pub realizations: u32,
+    /// What each that is run changes.
+    pub sets: &'a [Vec<Value>],
+}
+
+impl SetsFrom<'_> {
+    /// What is run, in words.
+    pub fn words(&self) -> String {
+        let keys: Vec<&str> = self.sets.iter().take(1).flatten().map(|value| value.key).collect();
+        let all = if self.sets.len() == self.in_file {
+            "all of".to_owned()
+        } else {
+            format!("the first of {} in", self.in_file)
+        };
+        format!(
+            "{} of parameters, {all} {}, with {} of each: {}.",
+            counted(self.sets.len(), "set"),
+            self.file,
+            counted(self.realizations as usize, "realization"),
+            keys.join(", ")
         )
     }
 }

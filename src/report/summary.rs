@@ -3,7 +3,7 @@
 use super::SCHEMA_VERSION;
 use super::answer::Answer;
 use super::json::lines;
-use super::study::{FittedFrom, Input, Origin, Study};
+use super::study::{FittedFrom, Input, Origin, SetsFrom, Study};
 use crate::baseline::{Baseline, BaselineYears, Detrended};
 use crate::basin::BeyondStations;
 use crate::defaults::DefaultInForce;
@@ -151,6 +151,8 @@ struct Parameters<'a> {
     snow: &'a SnowParams,
     is_fitted: bool,
     fitted: Option<FittedFrom<'a>>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    parameter_sets: Option<SetsFrom<'a>>,
     levels_c: &'a [f64],
     reference_c: f64,
     warming: &'a Warming,
@@ -209,6 +211,7 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
             snow: study.snow,
             is_fitted: study.fitted.is_some_and(|fitted| !fitted.taken.is_empty()),
             fitted: study.fitted,
+            parameter_sets: study.parameter_sets,
             levels_c: &findings.levels_c,
             reference_c: findings.levels_c[findings.reference],
             warming: study.warming,

@@ -8,6 +8,7 @@ mod driest_and_wettest;
 mod generator_sheet;
 mod ground;
 mod measures;
+mod parameter_spread;
 mod record_range;
 mod record_years;
 mod through_year;
@@ -34,6 +35,9 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     add("driest-and-wettest", driest_and_wettest::driest_and_wettest(findings, units));
     add("yardsticks", yardsticks::yardsticks(findings, units));
     add("record-range", record_range::record_range(findings, units));
+    if let Some(spread) = &findings.parameter_spread {
+        add("parameter-spread", parameter_spread::parameter_spread(spread, units));
+    }
     if let Some(found) = &findings.break_even {
         add("break-even", break_even::break_even(found, units));
     }

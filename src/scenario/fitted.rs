@@ -156,7 +156,8 @@ impl Draft {
     }
 }
 
-fn is_stated(document: &Document<'_>, key: &str) -> bool {
+/// Whether the scenario states the key itself.
+pub(super) fn is_stated(document: &Document<'_>, key: &str) -> bool {
     match key.strip_prefix("snow.rain_snow.") {
         Some(_) => OF_RAIN_AND_SNOW.iter().any(|name| document.has(&format!("snow.rain_snow.{name}"))),
         None => document.has(key),

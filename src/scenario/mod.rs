@@ -18,6 +18,7 @@ mod nearest;
 mod notes;
 mod numbers;
 mod observed;
+mod parameter_sets;
 mod precipitation_change;
 mod realizations;
 mod report;
@@ -37,6 +38,7 @@ pub use fit::FitTyped;
 pub use fitted::{FITTED_KEY, Fitted, read_fitted};
 pub use hypsometry::HypsometryTyped;
 pub use observed::ObservedTyped;
+pub use parameter_sets::{PARAMETER_SETS_KEY, ParameterSets, ParameterSetsTyped, read_parameter_sets};
 pub use realizations::RealizationsTyped;
 pub use report::ReportTyped;
 pub use warming::WarmingTyped;
@@ -104,6 +106,8 @@ pub struct Draft {
     pub snow: Option<SnowParams>,
     /// The file of fitted parameters, as typed.
     pub fitted_file: Option<String>,
+    /// Sets of parameters that a study runs beside its own.
+    pub parameter_sets: Option<ParameterSetsTyped>,
     /// `[warming]`.
     pub warming: Option<WarmingTyped>,
     /// `[realizations]`.
@@ -164,6 +168,7 @@ pub fn read(document: &Document<'_>) -> Draft {
     let season = season::read(top.section("season"), is_southern);
     let mut snow = top.section("snow");
     let fitted_file = fitted::read(&mut snow);
+    let parameter_sets = parameter_sets::read(&mut snow);
     let snow = snow::read(snow, has_daily_range, is_southern);
     let warming = warming::read(top.section("warming"));
     let realizations = realizations::read(top.section("realizations"));
@@ -193,6 +198,7 @@ pub fn read(document: &Document<'_>) -> Draft {
     );
     let mut draft = notes.into_draft(title, seed, parts);
     draft.fitted_file = fitted_file;
+    draft.parameter_sets = parameter_sets;
     document.keep_what_is_certain(&mut draft.faults);
     draft
 }

@@ -58,6 +58,7 @@ impl Notes {
             season,
             snow,
             fitted_file: None,
+            parameter_sets: None,
             warming,
             realizations,
             report,

@@ -117,6 +117,18 @@ impl Table<'_> {
         }
     }
 
+    /// The fault of a column that nothing is called.
+    pub fn name_fault(&self, column: usize, expected: &str, mend: &str) -> Fault {
+        let name = self.header.get(column).unwrap_or("");
+        let bytes = place::cell_bytes(self.header_text, column, self.format.separator);
+        Fault {
+            place: self.place(self.header_line, self.header_text, name, bytes),
+            found: format!("a column called '{}'", one_line(name)),
+            expected: expected.to_owned(),
+            mend: mend.to_owned(),
+        }
+    }
+
     pub(super) fn repeated_column(&self, name: &str, [_, second]: [usize; 2]) -> Fault {
         let bytes = place::cell_bytes(self.header_text, second, self.format.separator);
         Fault {

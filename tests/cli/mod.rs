@@ -18,6 +18,7 @@ mod interrupt;
 mod keys;
 mod normal;
 mod observed;
+mod parameter_sets;
 mod results;
 mod scenario_faults;
 mod season_keys;

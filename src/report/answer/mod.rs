@@ -3,6 +3,7 @@
 mod break_even;
 mod chance;
 mod how_sure;
+mod parameters;
 mod place;
 mod verdict;
 mod volumes;
@@ -28,6 +29,9 @@ pub struct Answer {
     pub yardstick: Vec<String>,
     /// How sure it is: Monte Carlo error, the record's own uncertainty, and whether chance could hide it.
     pub how_sure: Vec<String>,
+    /// How far it hangs on the parameters, where sets of them were run.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub parameters: Vec<String>,
     /// How much earlier.
     pub timing: Vec<String>,
     /// Where.
@@ -81,6 +85,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
             .collect(),
         yardstick: yardstick::yardstick(findings, headline, reader),
         how_sure: how_sure::how_sure(findings, headline, reader),
+        parameters: parameters::parameters(findings, headline, reader),
         timing: (0..findings.levels_c.len()).filter_map(|at| place::timing(findings, at, reader)).collect(),
         elevation: place::elevation(findings, reader),
         volumes: volumes::volumes(findings, reader),
@@ -110,6 +115,7 @@ fn at_a_glance(
         ("How much?", how_much.chain(answer.elevation.clone()).collect()),
         ("Against which yardstick?", yardsticks.into_iter().flatten().cloned().collect()),
         ("How sure is it?", answer.how_sure.clone()),
+        ("Does it hang on the parameters?", answer.parameters.iter().skip(1).take(2).cloned().collect()),
         ("How much water is that?", answer.volumes.iter().cloned().collect()),
         (
             "What would make up for it?",

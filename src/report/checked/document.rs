@@ -9,7 +9,7 @@ use crate::defaults::DefaultInForce;
 use crate::ensemble::BandClimate;
 use crate::findings::GeneratorSheet;
 use crate::perturb::Warming;
-use crate::report::FittedFrom;
+use crate::report::{FittedFrom, SetsFrom};
 use crate::season::SeasonSettings;
 use crate::snow::{GaugeMultiplier, SnowParams};
 use crate::weather::{Counts, Means, SkippedYear, Suspicion};
@@ -47,6 +47,8 @@ struct Document<'a> {
     season: &'a SeasonSettings,
     snow: &'a SnowParams,
     fitted: Option<FittedFrom<'a>>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    parameter_sets: Option<SetsFrom<'a>>,
     is_fitted: bool,
     levels_c: &'a [f64],
     reference_c: f64,
@@ -126,6 +128,7 @@ impl Checked<'_> {
             season: self.season,
             snow: self.snow,
             fitted: self.fitted,
+            parameter_sets: self.parameter_sets,
             is_fitted: false,
             levels_c: self.levels_c,
             reference_c: self.levels_c[self.reference],

@@ -10,7 +10,7 @@ mod record;
 use super::numbers::{counted, fixed, signed};
 use super::reader::Reader;
 use super::snow_words;
-use super::study::FittedFrom;
+use super::study::{FittedFrom, SetsFrom};
 use crate::baseline::{Baseline, BaselineYears, Detrended, Seasons};
 use crate::basin::{Basin, BeyondStations};
 use crate::defaults::DefaultInForce;
@@ -60,6 +60,8 @@ pub struct Checked<'a> {
     pub sites: Vec<Site<'a>>,
     /// What is in force from a file of fitted parameters.
     pub fitted: Option<FittedFrom<'a>>,
+    /// Sets of parameters that a study would run beside its own.
+    pub parameter_sets: Option<SetsFrom<'a>>,
     /// Dates and windows.
     pub season: &'a SeasonSettings,
     /// Snow parameters.
@@ -144,6 +146,9 @@ impl Checked<'_> {
         match self.fitted {
             Some(fitted) => page.line("fitted", fitted.words()),
             None => page.line("fitted", "no: its parameters are not fitted to observed snow"),
+        }
+        if let Some(sets) = self.parameter_sets {
+            page.line("sets", sets.words());
         }
         page.line("rain or snow", snow_words::rain_or_snow(self.reader, self.snow));
         for (name, what) in snow_words::options(self.reader, self.snow) {

@@ -1,0 +1,75 @@
+//! Spreads of parameters, precipitation and warming side by side.
+
+use super::cells::{Told, finish, name, optional, unit_names, write};
+use crate::findings::{Mover, OverSets, ParameterSpread};
+use crate::units::UnitSystem;
+use csv::Writer;
+
+/// One row a measure and level but the reference; numbers in the measure's own unit, which stands in a column.
+pub(super) fn parameter_spread(spread: &ParameterSpread, units: UnitSystem) -> Vec<u8> {
+    let mut writer = Writer::from_writer(Vec::new());
+    let mut header =
+        ["measure", "unit", "unit_of_change", "sets", "realizations_of_each"].map(str::to_owned).to_vec();
+    header.push(format!("level_{}", units.warming().suffix));
+    for number in ["reference_median", "change", "change_pct"] {
+        header
+            .extend(["lowest", "q10", "q50", "q90", "highest"].map(|end| format!("{number}_{end}_of_sets")));
+    }
+    header.extend(
+        [
+            "warming",
+            "precipitation_half_spread",
+            "parameters_reach",
+            "warming_over_parameters",
+            "largest",
+            "variance_share_level",
+            "variance_share_realization",
+            "variance_share_set",
+            "variance_share_remainder",
+        ]
+        .map(str::to_owned),
+    );
+    write(&mut writer, &header);
+    for found in &spread.measures {
+        let told = Told { units, kind: found.measure.kind };
+        let [unit, unit_of_change] = unit_names(found.measure.kind, units);
+        for level in &found.levels {
+            let mut row = vec![
+                name(&found.measure, units),
+                unit.to_owned(),
+                unit_of_change.to_owned(),
+                spread.sets.to_string(),
+                spread.realizations.to_string(),
+                units.warming().of(level.level_c).to_string(),
+            ];
+            row.extend(over_sets(Some(found.reference), |value| told.in_units(value)));
+            row.extend(over_sets(Some(level.shift), |value| told.in_units(value)));
+            row.extend(over_sets(level.percent_change, |percent| percent));
+            let weighed = level.weighed;
+            let sizes = weighed.map(|found| [found.warming, found.precipitation, found.parameters]);
+            row.extend([0, 1, 2].map(|at| told.change(sizes.map(|sizes| sizes[at]))));
+            row.push(optional(weighed.and_then(|found| found.warming_over_parameters)));
+            row.push(weighed.map_or("", |found| word(found.largest)).to_owned());
+            let shares = level.variance_shares;
+            let shares =
+                shares.map(|shares| [shares.level, shares.realization, shares.set, shares.remainder]);
+            row.extend([0, 1, 2, 3].map(|at| optional(shares.map(|shares| shares[at]))));
+            write(&mut writer, &row);
+        }
+    }
+    finish(writer)
+}
+
+fn over_sets(found: Option<OverSets>, told: impl Fn(f64) -> f64) -> [String; 5] {
+    let numbers =
+        found.map(|found| [Some(found.lowest), found.q10, Some(found.q50), found.q90, Some(found.highest)]);
+    numbers.unwrap_or_default().map(|number| optional(number.map(&told)))
+}
+
+fn word(mover: Mover) -> &'static str {
+    match mover {
+        Mover::Warming => "warming",
+        Mover::Precipitation => "precipitation",
+        Mover::Parameters => "parameters",
+    }
+}
