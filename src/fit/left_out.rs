@@ -1,13 +1,15 @@
 //! Winters that no fit may see and that none is judged on: the record itself is at fault in them.
 //!
-//! Four rules, the same for every site and fixed before anything is fitted: they ask the readings and the weather, never the
+//! A few rules, the same for every site and fixed before anything is fitted: they ask the readings and the weather, never the
 //! model. Limits without a source are common practice.
 
+use super::failing_sensor::{
+    FAR_C, FAR_DEVIATIONS, MONTHS_ASKED, MOST_FAR, RANGE_C, RANGE_DEVIATIONS, far_values, median, odd_ranges,
+};
 use super::site::{Site, observed_days};
 use crate::calendar::date_of;
 use crate::observed::{Kind, Observations};
 use crate::weather::{Series, YearSpan, YearView};
-use chrono::Datelike;
 use serde::Serialize;
 
 /// Days at most this warm bring snow alone, and none of it melts, degC.
@@ -17,7 +19,7 @@ const LEAST_COLD_MM: f64 = 50.0;
 /// What the pillow gained over what the gauge caught lies within this factor of the site's median year.
 const GAUGE_FACTOR: f64 = 1.4;
 /// A usual year is known from so many.
-const LEAST_YEARS: usize = 5;
+pub(super) const LEAST_YEARS: usize = 5;
 /// A pillow under snow reads the same for so many days on end,
 const FLAT_DAYS: usize = 10;
 /// while so much falls on cold ones: it is stuck, mm.
@@ -28,15 +30,6 @@ const SNOW_MM: f64 = 10.0;
 const JUMP_MM: f64 = 40.0;
 /// Days before and after the rise whose precipitation counts, as gauges and pillows keep different hours.
 const JUMP_REACH_DAYS: usize = 2;
-/// A month's mean daily range lies so near that month's median year, degC,
-const RANGE_C: f64 = 5.0;
-/// or so near in scaled median deviations of its years: a sensor that fails shows it there first.
-const RANGE_DEVIATIONS: f64 = 4.0;
-/// Of a water year the first nine months are asked; snow is gone in the others, or nearly so.
-const MONTHS_ASKED: usize = 9;
-/// Median deviation of normal numbers to their standard deviation.
-const NORMAL_SCALE: f64 = 1.4826;
-
 /// A rule by which a winter is left out.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
 #[serde(rename_all = "kebab-case")]
@@ -49,12 +42,19 @@ pub enum Rule {
     PillowJumps,
     /// The daily range of temperature is not that of the place.
     TemperatureRange,
+    /// Temperatures that the place does not have.
+    TemperatureFar,
 }
 
 impl Rule {
     /// Every rule, in the order in which they are asked.
-    pub const EACH: [Self; 4] =
-        [Self::GaugeAgainstPillow, Self::PillowStuck, Self::PillowJumps, Self::TemperatureRange];
+    pub const EACH: [Self; 5] = [
+        Self::GaugeAgainstPillow,
+        Self::PillowStuck,
+        Self::PillowJumps,
+        Self::TemperatureRange,
+        Self::TemperatureFar,
+    ];
 
     /// Its name.
     pub fn name(self) -> &'static str {
@@ -63,6 +63,7 @@ impl Rule {
             Self::PillowStuck => "pillow stuck",
             Self::PillowJumps => "pillow jumps",
             Self::TemperatureRange => "temperature range",
+            Self::TemperatureFar => "temperatures far off",
         }
     }
 
@@ -82,8 +83,12 @@ impl Rule {
                  {JUMP_REACH_DAYS} days before and after"
             ),
             Self::TemperatureRange => format!(
-                "In the first nine months of the water year, a month's mean daily range of temperature differs from that month's \
-                 median year by more than {RANGE_C} degC and {RANGE_DEVIATIONS} scaled median deviations"
+                "In the first {MONTHS_ASKED} months of the water year, a month's mean daily range of temperature differs from that \
+                 month's median year by more than {RANGE_C} degC and {RANGE_DEVIATIONS} scaled median deviations"
+            ),
+            Self::TemperatureFar => format!(
+                "In these months, more than {MOST_FAR} minima and maxima differ from the median of their month by more than \
+                 {FAR_C} degC and {FAR_DEVIATIONS} scaled median deviations"
             ),
         }
     }
@@ -104,7 +109,7 @@ pub struct LeftOut {
 
 /// The winters of all sites that are left out, by site, year and rule; `weather` as the gauge caught it.
 pub fn left_out(sites: &[Site<'_>], weather: &Series) -> Vec<LeftOut> {
-    let of_temperature = odd_ranges(weather);
+    let (odd_ranges, far_values) = (odd_ranges(weather), far_values(weather));
     let mut left_out = Vec::new();
     for site in sites {
         let years: Vec<SiteYear<'_>> =
@@ -115,11 +120,8 @@ pub fn left_out(sites: &[Site<'_>], weather: &Series) -> Vec<LeftOut> {
                 Rule::GaugeAgainstPillow => median_ratio.and_then(|median| year.unlike_gauge(median)),
                 Rule::PillowStuck => year.stuck(),
                 Rule::PillowJumps => year.jump(),
-                Rule::TemperatureRange => {
-                    let odd =
-                        of_temperature.iter().find(|(water_year, _)| *water_year == year.span.water_year);
-                    odd.map(|(_, found)| found.clone())
-                }
+                Rule::TemperatureRange => year.among(&odd_ranges),
+                Rule::TemperatureFar => year.among(&far_values),
             });
             left_out.extend(Rule::EACH.into_iter().zip(found).filter_map(|(rule, found)| {
                 let water_year = year.span.water_year;
@@ -162,6 +164,12 @@ impl<'a> SiteYear<'a> {
             observed,
             is_daily,
         })
+    }
+
+    /// What was found in this year.
+    fn among(&self, found: &[(i32, String)]) -> Option<String> {
+        let of_year = found.iter().find(|(water_year, _)| *water_year == self.span.water_year);
+        of_year.map(|(_, found)| found.clone())
     }
 
     /// Days with a reading as they begin and as they end: the change belongs to the day.
@@ -219,56 +227,6 @@ impl<'a> SiteYear<'a> {
 fn median_ratio(years: &[SiteYear<'_>]) -> Option<f64> {
     let ratios: Vec<f64> = years.iter().filter_map(SiteYear::ratio).collect();
     (ratios.len() >= LEAST_YEARS).then(|| median(ratios)).filter(|median| *median > 0.0)
-}
-
-/// Water years in which a month's daily range is not that of the place, and the first such month in words. Records of mean
-/// temperature alone have no range.
-fn odd_ranges(weather: &Series) -> Vec<(i32, String)> {
-    let by_year: Vec<[Option<f64>; 12]> =
-        weather.years.iter().map(|span| mean_ranges(weather.view(span))).collect();
-    let usual: Vec<Option<[f64; 2]>> = (0..12)
-        .map(|month| {
-            let ranges: Vec<f64> = by_year.iter().filter_map(|year| year[month]).collect();
-            (ranges.len() >= LEAST_YEARS).then(|| {
-                let middle = median(ranges.clone());
-                [middle, NORMAL_SCALE * median(ranges.iter().map(|range| (range - middle).abs()).collect())]
-            })
-        })
-        .collect();
-    let odd = weather.years.iter().zip(&by_year).filter_map(|(span, ranges)| {
-        let months = (0..MONTHS_ASKED).map(|ahead| (span.first.month0() as usize + ahead) % 12);
-        let found = months.filter_map(|month| Some((month, ranges[month]?, usual[month]?))).find(
-            |(_, range, [middle, deviation])| {
-                let off = (range - middle).abs();
-                off > RANGE_C && off > RANGE_DEVIATIONS * deviation
-            },
-        );
-        found.map(|(month, range, [middle, _])| {
-            (
-                span.water_year,
-                format!("{range:.1} degC in month {}, {middle:.1} in the median year", month + 1),
-            )
-        })
-    });
-    odd.collect()
-}
-
-/// Mean daily range by month, January first, degC.
-fn mean_ranges(year: YearView<'_>) -> [Option<f64>; 12] {
-    let mut sums = [(0.0, 0.0); 12];
-    for (month, half_range_c) in year.month.iter().zip(year.half_range_c) {
-        let (sum_c, days) = &mut sums[usize::from(*month)];
-        *sum_c += 2.0 * half_range_c;
-        *days += 1.0;
-    }
-    sums.map(|(sum_c, days)| (days > 0.0).then(|| sum_c / days))
-}
-
-/// Of an even number of values the mean of the two in the middle.
-fn median(mut values: Vec<f64>) -> f64 {
-    values.sort_by(f64::total_cmp);
-    let middle = values.len() / 2;
-    if values.len().is_multiple_of(2) { (values[middle - 1] + values[middle]) / 2.0 } else { values[middle] }
 }
 
 #[cfg(test)]

@@ -6,6 +6,7 @@
 mod comparison;
 mod day_of_year_mean;
 mod dispersed;
+mod failing_sensor;
 mod held_against;
 mod hill;
 #[cfg(test)]

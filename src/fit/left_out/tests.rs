@@ -2,7 +2,7 @@
 
 use super::*;
 use crate::observed::{Counts, State};
-use chrono::{Days, NaiveDate};
+use chrono::{Datelike, Days, NaiveDate};
 
 const YEARS: i32 = 8;
 const COLD_DAYS: usize = 180;
@@ -121,4 +121,25 @@ fn a_failing_sensor_shows_in_its_range() {
     assert_eq!(with_month(0, 2.0), [(2004, Rule::TemperatureRange)]);
     assert_eq!(with_month(0, 7.0), []);
     assert_eq!(with_month(7, 8.0), [], "August");
+}
+
+/// A day 30 degC below others has a minimum and a maximum that are far off; two such days are a failing sensor's. Where the days of
+/// every winter differ by as much, they are that place's.
+#[test]
+fn temperatures_that_the_place_does_not_have() {
+    let with_cold_days = |weather: &Series, days: usize| {
+        let mut weather = weather.clone();
+        let of_2004 = weather.years[3];
+        for day in (of_2004.start + 40..).take(days) {
+            weather.mean_c[day] -= 30.0;
+        }
+        rules(&weather, pillow_mm)
+    };
+    assert_eq!(with_cold_days(&weather(), 1), []);
+    assert_eq!(with_cold_days(&weather(), 2), [(2004, Rule::TemperatureFar)]);
+    let mut continental = weather();
+    for (day, mean_c) in continental.mean_c.iter_mut().enumerate() {
+        *mean_c -= f64::from((day % 5) as u8) * 8.0;
+    }
+    assert_eq!(with_cold_days(&continental, 2), []);
 }
