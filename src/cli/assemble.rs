@@ -225,8 +225,8 @@ fn read_fitted_of(
         return Ok(None);
     };
     let file = read_data(folder, &name, FITTED_KEY, Encoding::Utf8).map_err(|fault| vec![fault])?;
-    let values = read_fitted(&file.name, &file.text)?;
-    Ok(draft.take_fitted(&name, &values, document).map(|fitted| (fitted, file)))
+    let fitted = read_fitted(&file.name, &file.text)?;
+    Ok(draft.take_fitted(&name, fitted, document).map(|fitted| (fitted, file)))
 }
 
 /// Reads the file of sets of parameters that a study runs beside its own.

@@ -95,8 +95,8 @@ impl Ready {
 
     /// What is in force from a file of fitted parameters.
     pub fn fitted_from(&self) -> Option<FittedFrom<'_>> {
-        let Fitted { file, taken, left } = self.fitted.as_ref()?;
-        Some(FittedFrom { file, taken, left })
+        let Fitted { file, taken, left, skill } = self.fitted.as_ref()?;
+        Some(FittedFrom { file, taken, left, skill })
     }
 
     /// What is run beside the study's own parameters.

@@ -10,7 +10,7 @@ use super::ready::Ready;
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
     Findings, OtherChange, ParameterSpread, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit,
-    Runs, TIMES_ASSUMED, answer,
+    Runs, TIMES_ASSUMED, answer, warm_year_biases,
 };
 use crate::perturb::{Generator, MeanChange, TemperatureHeld};
 use crate::season::Measures;
@@ -106,9 +106,14 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let findings = answer(&runs, &questions, progress).map_err(halted)?;
     let parameter_spread = of_sets
         .and_then(|sets| ParameterSpread::of(&sets, &findings.basin, &warming.levels_c, warming.reference));
+    let reference_c = warming.levels_c[warming.reference];
+    let of_fit = ready.fitted.as_ref().zip(findings.basin.first());
+    let warm_year_biases = of_fit
+        .map(|(fitted, headline)| warm_year_biases(&fitted.skill, headline, reference_c))
+        .unwrap_or_default();
     let comparisons = ready.comparisons().map_err(open)?;
     let generator = Some(generator_sheet);
-    Ok(Findings { break_even, parameter_spread, comparisons, generator, ..findings })
+    Ok(Findings { break_even, parameter_spread, warm_year_biases, comparisons, generator, ..findings })
 }
 
 /// Watches for the wish to stop alone: runs that are too many and too short to count on a bar.

@@ -8,6 +8,7 @@ use super::record::RecordFindings;
 use super::record_range::{RecordRange, Refit};
 use super::resample::Resamples;
 use super::through_year::SweThroughYear;
+use super::warm_year_bias::WarmYearBias;
 use super::yardstick::{Assumed, Levels, yardsticks};
 use crate::basin::Band;
 use crate::ensemble::{BasinSeasons, Halt, Seasons, Watch};
@@ -73,6 +74,9 @@ pub struct Findings {
     /// How far the answer hangs on the parameters. Found by runs of its own, too.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub parameter_spread: Option<ParameterSpread>,
+    /// The model's error in warm winters beside the warming's effect; where a file of fitted parameters tells of it.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub warm_year_biases: Vec<WarmYearBias>,
     /// Of the basin mean, one entry a measure, the headline's first.
     pub basin: Vec<MeasureFindings>,
     /// Of each band, from the lowest.
@@ -139,6 +143,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         swe_through_year: SweThroughYear::of(&study.swe_days, questions.levels_c),
         break_even: None,
         parameter_spread: None,
+        warm_year_biases: Vec::new(),
         basin,
         bands: bands.collect(),
         comparisons: Vec::new(),

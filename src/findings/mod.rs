@@ -26,6 +26,7 @@ mod temperature_held;
 mod three_way;
 mod through_year;
 mod variance;
+mod warm_year_bias;
 mod yardstick;
 
 pub use answer::{BandFindings, Findings, OtherChange, Questions, Runs, answer};
@@ -61,4 +62,5 @@ pub use temperature_held::{HeldLevel, TemperatureHeldSpread};
 pub use three_way::{ThreeWay, ThreeWayShares};
 pub use through_year::{LevelThroughYear, SweThroughYear};
 pub use variance::{TwoWay, VarianceShares};
+pub use warm_year_bias::{COMPARABLE_SHARE, WarmYearBias, warm_year_biases};
 pub use yardstick::{TIMES_ASSUMED, Yardstick, YardstickLevel};

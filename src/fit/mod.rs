@@ -25,6 +25,7 @@ mod run;
 mod scores;
 mod search;
 mod site;
+mod skill_in_short;
 mod slope;
 mod space;
 mod splits;
@@ -47,6 +48,7 @@ pub use run::{FitEnd, FitResult, Fitted, Follow, LEAST_WINTERS, Plan, Stage, Unf
 pub use scores::{KlingGupta, Pair, kling_gupta, nash_sutcliffe};
 pub use search::{Asked, Found, Search, search};
 pub use site::{Model, Site, compare, site_lanes};
+pub use skill_in_short::{SkillInShort, skill_in_short};
 pub use slope::Slope;
 pub use space::{Bounded, Space, Value};
 pub use splits::{Split, Winter, winters_of};

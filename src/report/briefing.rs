@@ -13,6 +13,7 @@ mod record;
 mod snow;
 mod sources;
 mod volumes;
+mod warm_years;
 mod yardsticks;
 
 use super::answer::Answer;
@@ -41,7 +42,7 @@ pub fn briefing_html(
             (counted(findings.levels_c.len(), "warming level")) ", " (bands_in_words(study.basin))
         }
         h1 { (study.title) }
-        @if let Some(fitted) = study.fitted { p.notice { (fitted.words()) } }
+        @if let Some(fitted) = study.fitted { p.notice { (fitted.words()) (warm_years::in_short(study)) } }
         @else { p.notice {
             "This model is not fitted to observed snow. Its parameters are "
             @if study.defaults.iter().any(|default| default.key.starts_with("snow.")) { "at least in part the defaults" } @else { "those stated in the scenario" }
@@ -67,6 +68,7 @@ pub fn briefing_html(
         (volumes::section(study, &figures))
         (yardsticks::section(study, answer))
         (parameters::section(study, answer))
+        (warm_years::section(study))
         (record::section(study, &figures))
         (generator_sheet::section(study, &figures))
         (normal::section(study))

@@ -8,7 +8,7 @@ use crate::defaults::DefaultInForce;
 use crate::ensemble::RecordYear;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
-use crate::fit::Value;
+use crate::fit::{SkillInShort, Value};
 use crate::perturb::{GeneratorChoice, Warming};
 use crate::season::{Measure, SeasonSettings};
 use crate::snow::{GaugeMultiplier, SnowParams};
@@ -106,6 +106,8 @@ pub struct FittedFrom<'a> {
     pub taken: &'a [Value],
     /// Keys of it that the scenario states itself, or that its rules and options do not have.
     pub left: &'a [&'static str],
+    /// How the fit did, a site each; of files that say so.
+    pub skill: &'a [SkillInShort],
 }
 
 impl FittedFrom<'_> {

@@ -8,12 +8,16 @@ use super::nearest::nearest;
 use super::section::{Section, described};
 use super::{DefaultInForce, Draft};
 use crate::fault::{Fault, Place};
-use crate::fit::{PARAMETERS, Parameter, Parameters, Value};
+use crate::fit::{PARAMETERS, Parameter, Parameters, SkillInShort, Value};
+use serde::Deserialize;
 use std::ops::Range;
 use toml::de::{DeTable, DeValue};
 
 /// The key that names the file.
 pub const FITTED_KEY: &str = "snow.fitted";
+
+/// Tables of the file that say how the fit did.
+const SKILL_KEY: &str = "skill";
 
 /// Numbers of `[snow.rain_snow]`: who states one of them states the rule, and no fitted number belongs to it.
 const OF_RAIN_AND_SNOW: [&str; 4] =
@@ -28,6 +32,24 @@ pub struct Fitted {
     pub taken: Vec<Value>,
     /// Keys of the file that the scenario states itself, or that its rules and options do not have.
     pub left: Vec<&'static str>,
+    /// How the fit did, a site each.
+    pub skill: Vec<SkillInShort>,
+}
+
+/// What a file of fitted parameters holds.
+#[derive(Debug, Clone, PartialEq)]
+pub struct FittedFile {
+    /// Keys and values.
+    pub values: Vec<Value>,
+    /// How the fit did, a site each; a file need not say so.
+    pub skill: Vec<SkillInShort>,
+}
+
+/// The part of the file that holds no parameter.
+#[derive(Deserialize)]
+struct Beside {
+    #[serde(default)]
+    skill: Vec<SkillInShort>,
 }
 
 pub(super) fn read(snow: &mut Section<'_>) -> Option<String> {
@@ -45,17 +67,22 @@ pub(super) fn read(snow: &mut Section<'_>) -> Option<String> {
 ///
 /// # Errors
 /// Every fault of the file: what is no TOML, no parameter, no number, or outside its range.
-pub fn read_fitted(file: &str, text: &str) -> Result<Vec<Value>, Vec<Fault>> {
+pub fn read_fitted(file: &str, text: &str) -> Result<FittedFile, Vec<Fault>> {
     let document = Document::parse(text);
     let mut reader = Reader { file, text, document: &document, values: Vec::new(), faults: Vec::new() };
     reader.table("", document.table());
+    let skill = reader.skill();
     document.keep_what_is_certain(&mut reader.faults);
     for fault in &mut reader.faults {
         if let Place::Span(bytes) = &fault.place {
             fault.place = cell(file, text, &document, bytes.clone());
         }
     }
-    if reader.faults.is_empty() { Ok(reader.values) } else { Err(reader.faults) }
+    if reader.faults.is_empty() {
+        Ok(FittedFile { values: reader.values, skill })
+    } else {
+        Err(reader.faults)
+    }
 }
 
 struct Reader<'a> {
@@ -70,6 +97,9 @@ impl Reader<'_> {
     fn table(&mut self, above: &str, table: &DeTable<'_>) {
         for (name, value) in table {
             let key = format!("{above}{}", name.get_ref());
+            if key == SKILL_KEY {
+                continue;
+            }
             match (value.get_ref(), Parameter::named(&key)) {
                 (DeValue::Table(below), None) => self.table(&format!("{key}."), below),
                 (_, None) => {
@@ -80,6 +110,25 @@ impl Reader<'_> {
                     self.fault(name.span(), key, "the key of a parameter that can be fitted", mend);
                 }
                 (value_of, Some(parameter)) => self.number(parameter, value_of, value.span()),
+            }
+        }
+    }
+
+    /// The tables of skill; a file that is no TOML is a fault of the document's.
+    fn skill(&mut self) -> Vec<SkillInShort> {
+        match toml::from_str::<Beside>(self.text) {
+            Ok(beside) => beside.skill,
+            Err(error) => {
+                if let Some(bytes) = error.span() {
+                    let expected = "numbers of a fit's skill, as `thawline fit` writes them";
+                    self.fault(
+                        bytes,
+                        error.message().to_owned(),
+                        expected,
+                        "take the [[skill]] tables out".to_owned(),
+                    );
+                }
+                Vec::new()
             }
         }
     }
@@ -127,7 +176,8 @@ fn cell(file: &str, text: &str, document: &Document<'_>, bytes: Range<usize>) ->
 impl Draft {
     /// Takes fitted values for the keys that the scenario does not state itself; they are no defaults then. Nothing is taken
     /// where a part that they belong to has a fault.
-    pub fn take_fitted(&mut self, file: &str, values: &[Value], document: &Document<'_>) -> Option<Fitted> {
+    pub fn take_fitted(&mut self, name: &str, file: FittedFile, document: &Document<'_>) -> Option<Fitted> {
+        let FittedFile { values, skill } = file;
         let mut parameters = super::parameters(self.basin.as_ref(), self.weather.as_ref(), self.snow)?;
         let (mut taken, mut left) = (Vec::new(), Vec::new());
         for parameter in &PARAMETERS {
@@ -141,7 +191,7 @@ impl Draft {
         }
         self.defaults.retain(|default| !taken.iter().any(|value| replaces(value.key, default)));
         self.put(parameters);
-        Some(Fitted { file: file.to_owned(), taken, left })
+        Some(Fitted { file: name.to_owned(), taken, left, skill })
     }
 
     fn put(&mut self, parameters: Parameters) {
@@ -179,7 +229,7 @@ mod tests {
     #[test]
     fn values_are_read_in_tables_and_dotted_lines() {
         let text = "# fitted\nsnow.melt_base_c = 0.25\n[weather]\ngauge_multiplier = { snow = 1 }\n";
-        let values = read_fitted("p.toml", text).unwrap();
+        let values = read_fitted("p.toml", text).unwrap().values;
         let expected = [("snow.melt_base_c", 0.25), ("weather.gauge_multiplier.snow", 1.0)];
         assert_eq!(values, expected.map(|(key, value)| Value { key, value }));
     }

@@ -1,7 +1,7 @@
 //! `parameters.toml`: what was fitted, for a scenario to name.
 
 use super::{FitReport, effort, rounded};
-use crate::fit::Parameter;
+use crate::fit::{Parameter, SkillInShort, skill_in_short};
 use std::fmt::Write;
 
 /// The file: a key of a scenario a line, and how to use it.
@@ -25,7 +25,31 @@ pub(super) fn parameters_toml(report: &FitReport<'_>) -> Vec<u8> {
     for key in &report.result.not_identified {
         let _ = writeln!(text, "# {key}: not identified by the snow, stays as the scenario has it");
     }
+    text += "\n# How the fit did, for the briefing of a study that takes it.\n";
+    for skill in skill_in_short(report.result) {
+        let _ = write!(text, "\n[[skill]]\n{}", table(&skill));
+    }
     text.into_bytes()
+}
+
+/// A line a number; what is none has no line.
+fn table(skill: &SkillInShort) -> String {
+    let numbers = [
+        ("nash_sutcliffe", skill.nash_sutcliffe),
+        ("nash_sutcliffe_not_seen", skill.nash_sutcliffe_not_seen),
+        ("nash_sutcliffe_colder_to_warmer", skill.nash_sutcliffe_colder_to_warmer),
+        ("survey_bias_colder_to_warmer_pct", skill.survey_bias_colder_to_warmer_pct),
+        ("survey_bias_standard_error_pct", skill.survey_bias_standard_error_pct),
+        ("halves_apart_c", Some(skill.halves_apart_c)),
+    ];
+    let mut text =
+        format!("site = {}\nwinters = {}\n", toml::Value::from(skill.site.as_str()), skill.winters);
+    for (name, value) in numbers {
+        if let Some(value) = value {
+            let _ = writeln!(text, "{name} = {:?}", rounded(value));
+        }
+    }
+    text
 }
 
 /// A title is one line already; a comment must be.
