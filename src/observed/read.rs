@@ -14,10 +14,10 @@ use std::collections::BTreeMap;
 const MOST_MM: f64 = 12_000.0;
 /// A pillow without snow drifts so far below 0, mm; such a reading is 0.
 const DRIFT_MM: f64 = 25.0;
-/// A reading this far above, or below, both of its neighbours is a spike, mm,
+/// A reading this far above, or below, both of its neighbours is a spike, mm, where they are within half of that of each other;
 const SPIKE_MM: f64 = 25.0;
-/// where they are nearer to each other than this.
-const NEIGHBOURS_MM: f64 = 12.5;
+/// under deep snow, where pillows are less exact, this share of what the neighbours read (both limits are common practice).
+const SPIKE_SHARE: f64 = 0.05;
 /// A file of more lines is one of something else.
 const MOST_LINES: usize = 400 * 366;
 
@@ -193,10 +193,11 @@ fn spikes(lines: &[Line]) -> Vec<usize> {
             return false;
         };
         let [rise, fall] = [mm - before, mm - after];
+        let far_mm = SPIKE_MM.max(SPIKE_SHARE * (before + after) / 2.0);
         days == [1, 1]
-            && rise.abs().min(fall.abs()) > SPIKE_MM
+            && rise.abs().min(fall.abs()) > far_mm
             && (rise > 0.0) == (fall > 0.0)
-            && (before - after).abs() < NEIGHBOURS_MM
+            && (before - after).abs() < far_mm / 2.0
     };
     lines.windows(3).enumerate().filter(|(_, trio)| is_spike(trio)).map(|(at, _)| at + 1).collect()
 }
@@ -243,6 +244,8 @@ mod tests {
         assert_eq!(found(&[(0, 300.0), (1, 340.0), (2, 338.0)]), [0; 0], "a storm");
         assert_eq!(found(&[(0, 300.0), (1, 340.0), (2, 314.0)]), [0; 0], "neighbours that do not agree");
         assert_eq!(found(&[(0, 300.0), (1, 324.0), (2, 300.0)]), [0; 0], "not far");
+        assert_eq!(found(&[(0, 900.0), (1, 940.0), (2, 900.0)]), [0; 0], "not far for deep snow");
+        assert_eq!(found(&[(0, 900.0), (1, 950.0), (2, 900.0)]), [1], "far for deep snow");
         assert_eq!(found(&[(0, 300.0), (31, 340.0), (32, 300.0)]), [0; 0], "a course");
     }
 }

@@ -49,9 +49,10 @@ pub(super) fn page(report: &FitReport<'_>, drawn: &Drawn) -> Vec<u8> {
         h2 { "Parameters" }
         @for figure in drawn.of(FitPart::Parameters) { (page::figure(figure)) }
         (values::tables(report))
+        p { (values::of_intervals(report)) }
         p {
             "Searched for by dynamically dimensioned search (Tolson & Shoemaker 2007) from " (counted(report.starts, "start")) " of "
-            (counted(report.evaluations, "set")) " a split, the first at the scenario's own values, and refined by a compass search. A profile holds one parameter at nine values \
+            (counted(report.evaluations, "set")) " a split, the first at the scenario's own values, and refined by a climb along the parabola through the points around the best. A profile holds one parameter at nine values \
              over its bounds and refines the others there; it falls by its highest less its lowest objective. "
             @if result.not_identified.is_empty() { "All parameters are identified: each profile falls by more than 0.01." } @else {
                 "Where it falls by 0.01 or less the snow does not identify the parameter. The flattest goes back to the scenario's value, then \
