@@ -2,7 +2,7 @@
 
 use super::left_out::LEAST_YEARS;
 use crate::weather::{Series, YearView};
-use chrono::Datelike;
+use chrono::{Datelike, Month};
 
 /// A month's mean daily range lies so near that month's median year, degC,
 pub(super) const RANGE_C: f64 = 5.0;
@@ -39,10 +39,8 @@ pub(super) fn odd_ranges(weather: &Series) -> Vec<(i32, String)> {
             },
         );
         found.map(|(month, range, [middle, _])| {
-            (
-                span.water_year,
-                format!("{range:.1} degC in month {}, {middle:.1} in the median year", month + 1),
-            )
+            let name = Month::try_from(month as u8 + 1).map_or("", |month| month.name());
+            (span.water_year, format!("{range:.1} degC in {name}, {middle:.1} in the median year"))
         })
     });
     odd.collect()

@@ -44,7 +44,8 @@ fn row(level: &LevelBySet, reader: Reader) -> Markup {
     };
     let ratio = level.weighed.and_then(|found| found.warming_over_parameters);
     let percent = level.percent_change.map_or(DASH.to_owned(), |percent| {
-        format!("{} to {}", signed(percent.lowest, 0), signed(percent.highest, 0))
+        let [low, high] = [percent.lowest, percent.highest].map(|percent| signed(percent, 0));
+        if low == high { low } else { format!("{low} to {high}") }
     });
     let largest = level.weighed.map_or(DASH, |found| match found.largest {
         Mover::Warming => "warming",

@@ -42,9 +42,9 @@ fn beside_the_effect(found: &WarmYearBias, reader: Reader) -> String {
         .share
         .map_or(String::new(), |share| format!(": the error is {} of the effect in size", fixed(share, 2)));
     let verdict = if found.is_comparable {
-        "They are comparable, and the effect is no surer than that."
+        "The two are comparable, and the effect is no surer than that."
     } else {
-        "It is less than half of it."
+        "That is less than half."
     };
     format!(
         "{}: fitted on the coldest half of the winters, SWE on the survey date is off by {} % (modelled less observed{error}) in the warmest half, whose winters \

@@ -16,15 +16,20 @@ pub(super) fn section(left_out: &[LeftOut]) -> Markup {
         }
         @if !left_out.is_empty() { div.scroll { table.narrow {
             thead { tr {
-                th.text scope="col" { "Site" } th scope="col" { "water year" } th.text scope="col" { "found" }
-                th.text scope="col" { "left out because" }
+                th.text scope="col" { "Site" } th scope="col" { "Water year" } th.text scope="col" { "Found" }
+                th.text scope="col" { "Left out because" }
             } }
             tbody { @for out in left_out { tr {
-                td.text { (out.site) } td { (out.water_year) } td.text { (out.found) } td.text { (out.rule.name()) }
+                td.text { (out.site) } td { (out.water_year) } td.text { (typeset(&out.found)) } td.text { (out.rule.name()) }
             } } }
         } } }
-        dl { @for rule in Rule::EACH { dt { (rule.name()) } dd { (rule.words()) "." } } }
+        dl { @for rule in Rule::EACH { dt { (rule.name()) } dd { (typeset(&rule.words())) "." } } }
     }
+}
+
+/// Plain words as a page has them.
+fn typeset(words: &str) -> String {
+    words.replace("degC", "°C").replace(" -", " −")
 }
 
 /// One row a site, water year and rule.
