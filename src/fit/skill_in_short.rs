@@ -27,6 +27,20 @@ pub struct SkillInShort {
     pub halves_apart_c: f64,
 }
 
+impl SkillInShort {
+    /// Whether all of its numbers are finite.
+    pub fn is_finite(&self) -> bool {
+        let scores = [
+            self.nash_sutcliffe,
+            self.nash_sutcliffe_not_seen,
+            self.nash_sutcliffe_colder_to_warmer,
+            self.survey_bias_colder_to_warmer_pct,
+            self.survey_bias_standard_error_pct,
+        ];
+        self.halves_apart_c.is_finite() && scores.into_iter().flatten().all(f64::is_finite)
+    }
+}
+
 /// Of every site.
 pub fn skill_in_short(result: &FitResult) -> Vec<SkillInShort> {
     let mean_c = |split: Split| {

@@ -18,6 +18,8 @@ pub const FITTED_KEY: &str = "snow.fitted";
 
 /// Tables of the file that say how the fit did.
 const SKILL_KEY: &str = "skill";
+/// Head of such a table.
+const HEAD: &str = "[[skill]]";
 
 /// Numbers of `[snow.rain_snow]`: who states one of them states the rule, and no fitted number belongs to it.
 const OF_RAIN_AND_SNOW: [&str; 4] =
@@ -117,7 +119,14 @@ impl Reader<'_> {
     /// The tables of skill; a file that is no TOML is a fault of the document's.
     fn skill(&mut self) -> Vec<SkillInShort> {
         match toml::from_str::<Beside>(self.text) {
-            Ok(beside) => beside.skill,
+            Ok(beside) => {
+                if !beside.skill.iter().all(SkillInShort::is_finite) {
+                    let bytes = self.text.find(HEAD).map_or(0..0, |at| at..at + HEAD.len());
+                    let mend = "take the line out: what is none has no line".to_owned();
+                    self.fault(bytes, "a skill that is no number".to_owned(), "finite numbers", mend);
+                }
+                beside.skill
+            }
             Err(error) => {
                 if let Some(bytes) = error.span() {
                     let expected = "numbers of a fit's skill, as `thawline fit` writes them";
@@ -253,5 +262,13 @@ mod tests {
         }
         assert!(faults.iter().any(|fault| fault.mend.contains("write snow.melt_base_c")), "{faults:?}");
         assert!(read_fitted("p.toml", "snow.melt_base_c = \n").is_err());
+        let skill = |number: &str| {
+            read_fitted(
+                "p.toml",
+                &format!("[[skill]]\nsite = \"a\"\nwinters = 9\nhalves_apart_c = {number}\n"),
+            )
+        };
+        assert!(skill("1.5").is_ok_and(|file| file.skill.len() == 1));
+        assert!(skill("nan").is_err() && skill("-inf").is_err() && skill("\"a\"").is_err());
     }
 }
