@@ -108,13 +108,16 @@ fn drawn_out(winters: usize, parameters: usize) -> f64 {
     bent * student_score_of(1.0 - TAIL, more) / score_of(1.0 - TAIL)
 }
 
-/// The ends of a parameter's interval, as shares of its range.
+/// The ends of a parameter's interval, as shares of its range. The best lies between them, also where nearly all resamples lie on
+/// one side of it.
 fn ends(found: &[Found], at: usize, best: f64, drawn_out: f64) -> [f64; 2] {
     let mut shares: Vec<f64> = found.iter().map(|found| found.point[at]).collect();
     shares.sort_by(f64::total_cmp);
     let beyond = (TAIL * (shares.len() + 1) as f64).round().max(1.0) as usize - 1;
     let of_resamples = [shares.get(beyond), shares.iter().rev().nth(beyond)];
-    of_resamples.map(|end| end.map_or(best, |end| (best + drawn_out * (end - best)).clamp(0.0, 1.0)))
+    let [low, high] =
+        of_resamples.map(|end| end.map_or(best, |end| (best + drawn_out * (end - best)).clamp(0.0, 1.0)));
+    [low.min(best), high.max(best)]
 }
 
 #[cfg(test)]

@@ -15,10 +15,10 @@ use std::time::Instant;
 /// A truth that is sought: keys, and shares of their usual bounds.
 type Sought = [(&'static str, f64)];
 
-const FIVE: &Sought = &[
+/// What is searched for unless the scenario says otherwise.
+const USUAL: &Sought = &[
     ("snow.degree_day_factor_mm_per_c_day.highest", 0.35),
-    ("snow.degree_day_factor_mm_per_c_day.lowest", 0.2),
-    ("snow.melt_base_c", 0.55),
+    ("snow.degree_day_factor_mm_per_c_day.lowest", 0.4),
     ("snow.rain_snow.half_snow_at_c", 0.5),
     ("weather.gauge_multiplier.snow", 0.4),
 ];
@@ -158,11 +158,28 @@ fn intervals_hold_the_truth() {
 #[test]
 #[ignore = "takes minutes"]
 fn count_intervals_that_hold_the_truth() {
-    for sought in [FIVE, FOUR] {
+    for sought in [USUAL, FOUR] {
         for ((held, _), (key, _)) in coverage(200, 20, sought, 300).iter().zip(sought) {
             assert!((170..=190).contains(held), "{key}: {held} of 200");
         }
     }
+}
+
+/// By hand: ends 0.9 and 1 of all resamples above a best of 0.5 leave it at the lower end.
+#[test]
+fn the_best_lies_in_its_interval() {
+    let found = |share: f64| Found { point: vec![share], value: 0.0 };
+    let shares: Vec<Found> = (0..99).map(|at| found(0.9 + 0.001 * f64::from(at))).collect();
+    assert_eq!(ends(&shares, 0, 0.5, 1.5), [0.5, 1.0]);
+}
+
+/// What is counted as the usual parameters are they.
+#[test]
+fn the_usual_parameters_are_counted() {
+    let usual = super::super::PARAMETERS.iter().filter(|parameter| parameter.is_usual);
+    let has_value =
+        usual.filter(|parameter| parameter.get(&stated()).is_some()).map(|parameter| parameter.key);
+    assert_eq!(has_value.collect::<Vec<_>>(), USUAL.iter().map(|(key, _)| *key).collect::<Vec<_>>());
 }
 
 /// By hand: 20 winters and 5 parameters leave 15: sqrt(20/15) times t of 15 degrees of freedom, 1.7531, over the normal score, 1.6449
