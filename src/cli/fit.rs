@@ -10,7 +10,7 @@ use super::pool::in_pool;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
 use super::ready::Ready;
 use crate::fault::Fault;
-use crate::fit::{FitEnd, Held, LEAST_WINTERS, Plan, Site, Value, fit, left_out, without};
+use crate::fit::{FitEnd, Held, LEAST_WINTERS, LeftOut, Plan, Site, Value, fit, left_out, without};
 use crate::report::{FitReport, SCHEMA_VERSION, fit_files, fit_in_words, left_out_lines, publish};
 use serde::Serialize;
 use std::collections::BTreeSet;
@@ -51,7 +51,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
             shared,
         ));
     }
-    let left_out = left_out(&all_sites, &ready.record.series);
+    let left_out = left_out(&all_sites, &ready.record.series, scenario.weather.station_elevation_m);
     if !shared.quiet {
         output::complain(&left_out_lines(&left_out));
     }
@@ -87,12 +87,9 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         FitEnd::TooFewWinters(winters) => refused(
             &ready,
             "observed_swe",
-            &format!(
-                "{winters} water years in use with observed snow, {} more left out because the record is at fault",
-                left_out.iter().map(|out| out.water_year).collect::<BTreeSet<_>>().len()
-            ),
+            &format!("{winters} water years in use with observed snow{}", and_without(&left_out)),
             &format!("at least {LEAST_WINTERS}, so that halves of them can be told apart"),
-            "add years to the record or to the observed snow; `thawline check` says which are left out and why",
+            "add years to the record or to the observed snow; `thawline check` says which are not in use and why",
             shared,
         ),
     })?;
@@ -131,6 +128,19 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         output::complain(&format!("{pace}\n{}page: {}\n", fit_in_words(&report), page.display()));
     }
     Ok(())
+}
+
+/// `; the record is at fault in these, which no fit sees: 1990 at pillow (gauge against pillow)`; nothing where no rule found any.
+fn and_without(left_out: &[LeftOut]) -> String {
+    let of_sites: BTreeSet<String> = left_out
+        .iter()
+        .map(|out| format!("{} at {} ({})", out.water_year, out.site, out.rule.name()))
+        .collect();
+    if of_sites.is_empty() {
+        return String::new();
+    }
+    let winters: Vec<String> = of_sites.into_iter().collect();
+    format!("; the record is at fault in these, which no fit sees: {}", winters.join(", "))
 }
 
 fn target(ready: &Ready, shared: &Shared) -> Result<PathBuf, Failure> {

@@ -8,7 +8,7 @@ use crate::fit::Parameters;
 use crate::perturb::Generator;
 use crate::scenario::ParameterSets;
 use crate::season::{MELT_OUT_DAY, Measure};
-use ndarray::{Array3, Axis};
+use ndarray::{Array3, Axis, Slice};
 
 /// How many realizations of sets there will be.
 pub(super) fn realizations_of_sets(ready: &Ready) -> u32 {
@@ -17,7 +17,7 @@ pub(super) fn realizations_of_sets(ready: &Ready) -> u32 {
 
 /// Runs the first realizations of the study under every level from each set: its snow, the weather corrected for catch by its
 /// multipliers, the generator made anew from that, the same draws. Of each set period values of the headline and of melt-out are
-/// kept, of the basin.
+/// kept, of the basin; beside them those of `own`, the study's runs.
 ///
 /// # Errors
 /// Those of a run.
@@ -25,6 +25,7 @@ pub(super) fn run_sets(
     ready: &Ready,
     sets: &ParameterSets,
     plan: &Plan<'_>,
+    own: &BasinSeasons,
     watch: &dyn Watch,
 ) -> Result<SetRuns, Halt> {
     let all = plan.measures.list();
@@ -36,7 +37,9 @@ pub(super) fn run_sets(
         Ok(seasons.periods.select(Axis(1), &kept))
     };
     let periods = sets.parameters.iter().map(one).collect::<Result<_, _>>()?;
-    Ok(SetRuns { measures: kept.iter().map(|at| all[*at].clone()).collect(), periods })
+    let same = Slice::from(..sets.realizations as usize);
+    let own = own.periods.select(Axis(1), &kept).slice_axis(Axis(2), same).to_owned();
+    Ok(SetRuns { measures: kept.iter().map(|at| all[*at].clone()).collect(), periods, own })
 }
 
 fn run_set(of_set: &Ready, plan: &Plan<'_>, watch: &dyn Watch) -> Result<BasinSeasons, Halt> {

@@ -80,7 +80,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     };
     let refits: Vec<Refit> = of_records.map(refit).collect();
     let of_sets = match &ready.parameter_sets {
-        Some(sets) => Some(run_sets(ready, sets, &plan, progress).map_err(halted)?),
+        Some(sets) => Some(run_sets(ready, sets, &plan, &study.basin, progress).map_err(halted)?),
         None => None,
     };
     let generator_sheet = generator_sheet(ready, progress).map_err(halted)?;
@@ -107,7 +107,8 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let parameter_spread = of_sets
         .and_then(|sets| ParameterSpread::of(&sets, &findings.basin, &warming.levels_c, warming.reference));
     let reference_c = warming.levels_c[warming.reference];
-    let of_fit = ready.fitted.as_ref().zip(findings.basin.first());
+    // With a part of the fit alone this is another model than the one whose error was found.
+    let of_fit = ready.fitted.as_ref().filter(|fitted| fitted.left.is_empty()).zip(findings.basin.first());
     let warm_year_biases = of_fit
         .map(|(fitted, headline)| warm_year_biases(&fitted.skill, headline, reference_c))
         .unwrap_or_default();

@@ -62,5 +62,5 @@ pub use temperature_held::{HeldLevel, TemperatureHeldSpread};
 pub use three_way::{ThreeWay, ThreeWayShares};
 pub use through_year::{LevelThroughYear, SweThroughYear};
 pub use variance::{TwoWay, VarianceShares};
-pub use warm_year_bias::{COMPARABLE_SHARE, WarmYearBias, warm_year_biases};
+pub use warm_year_bias::{BiasVerdict, WarmYearBias, warm_year_biases};
 pub use yardstick::{TIMES_ASSUMED, Yardstick, YardstickLevel};

@@ -14,9 +14,6 @@ use crate::season::Measure;
 use ndarray::{Array3, ArrayView2, Axis};
 use serde::Serialize;
 
-/// With fewer sets the 10 % quantile would be the lowest of them.
-const LEAST_SETS_OF_DECILES: usize = 7;
-
 /// Some realizations under every level, from each set of parameters.
 #[derive(Debug, Clone, PartialEq)]
 pub struct SetRuns {
@@ -24,6 +21,8 @@ pub struct SetRuns {
     pub measures: Vec<Measure>,
     /// A set each: period values of the basin, `[level][measure][realization]`, the same realizations in all.
     pub periods: Vec<Array3<f64>>,
+    /// The same of the study's own parameters.
+    pub own: Array3<f64>,
 }
 
 /// Spreads of parameters, precipitation and warming side by side.
@@ -42,7 +41,9 @@ pub struct ParameterSpread {
 pub struct MeasureBySet {
     /// The measure.
     pub measure: Measure,
-    /// Each set's median over realizations at the reference.
+    /// The study's own median at the reference, over the realizations that the sets have.
+    pub own_reference: f64,
+    /// Each set's median over them.
     pub reference: OverSets,
     /// One entry a level but the reference.
     pub levels: Vec<LevelBySet>,
@@ -53,12 +54,6 @@ pub struct MeasureBySet {
 pub struct OverSets {
     /// The lowest.
     pub lowest: f64,
-    /// 10 % quantile, from seven sets on.
-    pub q10: Option<f64>,
-    /// Median.
-    pub q50: f64,
-    /// 90 % quantile, from seven sets on.
-    pub q90: Option<f64>,
     /// The highest.
     pub highest: f64,
 }
@@ -85,7 +80,8 @@ pub struct Weighed {
     pub warming: f64,
     /// The half of the study's 5-95 % precipitation spread that the change points to.
     pub precipitation: f64,
-    /// From the median of the sets' reference medians to the end of their range that the change points to.
+    /// From the study's own reference median, over the realizations of the sets, to the end of the sets' that the change points
+    /// to; 0 where no set lies on that side.
     pub parameters: f64,
     /// Warming over parameters; none where the sets do not differ.
     pub warming_over_parameters: Option<f64>,
@@ -115,7 +111,7 @@ impl ParameterSpread {
                 let at = runs.measures.iter().position(|measure| *measure == own.measure)?;
                 let of_sets: Vec<_> =
                     runs.periods.iter().map(|periods| periods.index_axis(Axis(1), at)).collect();
-                MeasureBySet::of(own, &of_sets, levels)
+                MeasureBySet::of(own, &runs.own.index_axis(Axis(1), at), &of_sets, levels)
             })
             .collect();
         let realizations = runs.periods.first()?.len_of(Axis(2));
@@ -124,12 +120,17 @@ impl ParameterSpread {
 }
 
 impl MeasureBySet {
-    /// `of_sets` are period values `[level][realization]`, a set each.
-    fn of(own: &MeasureFindings, of_sets: &[ArrayView2<'_, f64>], levels: Levels<'_>) -> Option<Self> {
-        let medians: Vec<f64> = of_sets
-            .iter()
-            .map(|set| quantile(&sorted(set.row(levels.reference).iter().copied()), 0.5))
-            .collect();
+    /// `of_own` and `of_sets` are period values `[level][realization]`, a set each.
+    fn of(
+        own: &MeasureFindings,
+        of_own: &ArrayView2<'_, f64>,
+        of_sets: &[ArrayView2<'_, f64>],
+        levels: Levels<'_>,
+    ) -> Option<Self> {
+        let median =
+            |set: &ArrayView2<'_, f64>| quantile(&sorted(set.row(levels.reference).iter().copied()), 0.5);
+        let own_reference = Some(median(of_own)).filter(|median| median.is_finite())?;
+        let medians: Vec<f64> = of_sets.iter().map(median).collect();
         let reference = OverSets::of(medians.iter().copied())?;
         let level = |(at, level_c): (usize, &f64)| {
             let shifts = of_sets.iter().map(|set| median_change(set, levels.reference, at));
@@ -145,12 +146,17 @@ impl MeasureBySet {
                 percent_change: percents.and_then(|percents| OverSets::of(percents.into_iter())),
                 weighed: shift
                     .zip(own.precipitation_spread)
-                    .map(|(shift, spread)| Weighed::of(shift, spread, reference)),
+                    .map(|(shift, spread)| Weighed::of(shift, spread, own_reference, reference)),
                 variance_shares: variance_shares(of_sets, levels.reference, at),
             })
         };
         let others = levels.levels_c.iter().enumerate().filter(|(at, _)| *at != levels.reference);
-        Some(Self { measure: own.measure.clone(), reference, levels: others.filter_map(level).collect() })
+        Some(Self {
+            measure: own.measure.clone(),
+            own_reference,
+            reference,
+            levels: others.filter_map(level).collect(),
+        })
     }
 }
 
@@ -159,22 +165,16 @@ impl OverSets {
     fn of(values: impl Iterator<Item = f64>) -> Option<Self> {
         let values = sorted(values);
         let (lowest, highest) = (*values.first()?, *values.last()?);
-        let decile = |p: f64| (values.len() >= LEAST_SETS_OF_DECILES).then(|| quantile(&values, p));
-        (lowest.is_finite() && highest.is_finite()).then(|| Self {
-            lowest,
-            q10: decile(0.1),
-            q50: quantile(&values, 0.5),
-            q90: decile(0.9),
-            highest,
-        })
+        (lowest.is_finite() && highest.is_finite()).then_some(Self { lowest, highest })
     }
 }
 
 impl Weighed {
-    fn of(shift: f64, spread: Spread, reference: OverSets) -> Self {
-        let OverSets { lowest, q50, highest, .. } = reference;
+    fn of(shift: f64, spread: Spread, own_reference: f64, reference: OverSets) -> Self {
+        let OverSets { lowest, highest } = reference;
         let [warming, precipitation] = [shift.abs(), spread.half_towards(shift)];
-        let parameters = if shift < 0.0 { q50 - lowest } else { highest - q50 };
+        let reach = if shift < 0.0 { own_reference - lowest } else { highest - own_reference };
+        let parameters = reach.max(0.0);
         let largest = if warming >= precipitation && warming >= parameters {
             Mover::Warming
         } else if precipitation >= parameters {

@@ -69,6 +69,11 @@ pub(super) fn far_values(weather: &Series) -> Vec<(i32, String)> {
             values.push(value);
         }
     }
+    // Of means alone both are one value.
+    let (values_a_day, name) = match weather.half_range_c.iter().all(|half_range_c| *half_range_c == 0.0) {
+        true => (1, "daily means"),
+        false => (2, "minima and maxima"),
+    };
     let usual: Vec<[Option<[f64; 2]>; 2]> = by_month
         .into_iter()
         .map(|extremes| extremes.map(|values| (!values.is_empty()).then(|| usual(&values))))
@@ -83,6 +88,7 @@ pub(super) fn far_values(weather: &Series) -> Vec<(i32, String)> {
             extremes(day)
                 .into_iter()
                 .zip(month)
+                .take(values_a_day)
                 .filter(|(value, usual)| {
                     usual.is_some_and(|[middle, deviation]| {
                         (value - middle).abs() > FAR_C.max(FAR_DEVIATIONS * deviation)
@@ -91,7 +97,7 @@ pub(super) fn far_values(weather: &Series) -> Vec<(i32, String)> {
                 .count()
         };
         let count: usize = (span.start..span.start + span.days).filter(is_asked).map(is_far).sum();
-        (count > MOST_FAR).then(|| (span.water_year, format!("{count} minima and maxima")))
+        (count > MOST_FAR).then(|| (span.water_year, format!("{count} {name}")))
     });
     far.collect()
 }

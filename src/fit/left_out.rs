@@ -12,8 +12,10 @@ use crate::observed::{Kind, Observations};
 use crate::weather::{Series, YearSpan, YearView};
 use serde::Serialize;
 
-/// Days at most this warm bring snow alone, and none of it melts, degC.
+/// Days at most this warm at gauge and pillow bring snow alone, and none of it melts, degC.
 const COLD_C: f64 = -2.0;
+/// A pillow below the gauge is so much warmer (International Standard Atmosphere), degC per m.
+const C_PER_M: f64 = 0.0065;
 /// So much must have fallen on them before gauge and pillow are compared, mm.
 const LEAST_COLD_MM: f64 = 50.0;
 /// What the pillow gained over what the gauge caught lies within this factor of the site's median year.
@@ -71,7 +73,7 @@ impl Rule {
     pub fn words(self) -> String {
         match self {
             Self::GaugeAgainstPillow => format!(
-                "On days of {COLD_C} degC and colder, what the pillow gained over what the gauge caught differs from the site's \
+                "On days of {COLD_C} degC and colder at gauge and pillow, what the pillow gained over what the gauge caught differs from the site's \
                  median year by more than a factor of {GAUGE_FACTOR}"
             ),
             Self::PillowStuck => format!(
@@ -107,13 +109,14 @@ pub struct LeftOut {
     pub found: String,
 }
 
-/// The winters of all sites that are left out, by site, year and rule; `weather` as the gauge caught it.
-pub fn left_out(sites: &[Site<'_>], weather: &Series) -> Vec<LeftOut> {
+/// The winters of all sites that are left out, by site, year and rule; `weather` as the gauge, at
+/// `station_m`, caught it.
+pub fn left_out(sites: &[Site<'_>], weather: &Series, station_m: f64) -> Vec<LeftOut> {
     let (odd_ranges, far_values) = (odd_ranges(weather), far_values(weather));
     let mut left_out = Vec::new();
     for site in sites {
         let years: Vec<SiteYear<'_>> =
-            weather.years.iter().filter_map(|span| SiteYear::of(site, weather, span)).collect();
+            weather.years.iter().filter_map(|span| SiteYear::of(site, weather, span, station_m)).collect();
         let median_ratio = median_ratio(&years);
         for year in &years {
             let found = Rule::EACH.map(|rule| match rule {
@@ -132,7 +135,7 @@ pub fn left_out(sites: &[Site<'_>], weather: &Series) -> Vec<LeftOut> {
     left_out
 }
 
-/// What remains of a site's readings; none where nothing does.
+/// What remains of a site's readings; none where no year in use has one.
 pub fn without(site: &Site<'_>, left_out: &[LeftOut], weather: &Series) -> Option<Observations> {
     let gone: Vec<&YearSpan> = weather
         .years
@@ -143,7 +146,11 @@ pub fn without(site: &Site<'_>, left_out: &[LeftOut], weather: &Series) -> Optio
         |date| gone.iter().any(|span| (span.first..date_of(span.first, span.days + 1)).contains(&date));
     let mut remaining = site.observations.clone();
     remaining.states.retain(|state| !is_gone(state.date));
-    (!remaining.states.is_empty()).then_some(remaining)
+    let is_in_use = weather
+        .years
+        .iter()
+        .any(|span| observed_days(Some(&remaining), span.first, span.days).iter().any(Option::is_some));
+    is_in_use.then_some(remaining)
 }
 
 /// A water year of a site.
@@ -152,10 +159,12 @@ struct SiteYear<'a> {
     weather: YearView<'a>,
     observed: Vec<Option<f64>>,
     is_daily: bool,
+    /// So much warmer the site is than the station, where it lies below it, degC.
+    warmer_c: f64,
 }
 
 impl<'a> SiteYear<'a> {
-    fn of(site: &Site<'_>, weather: &'a Series, span: &'a YearSpan) -> Option<Self> {
+    fn of(site: &Site<'_>, weather: &'a Series, span: &'a YearSpan, station_m: f64) -> Option<Self> {
         let observed = observed_days(Some(site.observations), span.first, span.days);
         let is_daily = site.observations.kind == Kind::Pillow;
         observed.iter().any(Option::is_some).then(|| Self {
@@ -163,6 +172,7 @@ impl<'a> SiteYear<'a> {
             weather: weather.view(span),
             observed,
             is_daily,
+            warmer_c: (C_PER_M * (station_m - site.elevation_m)).max(0.0),
         })
     }
 
@@ -178,9 +188,14 @@ impl<'a> SiteYear<'a> {
         pairs.filter(|_| self.is_daily).filter_map(|(day, pair)| Some((day, pair[0]?, pair[1]?)))
     }
 
+    /// Whether a day is cold both where the gauge is and where the pillow is.
+    fn is_cold(&self, day: usize) -> bool {
+        self.weather.mean_c[day] + self.warmer_c <= COLD_C
+    }
+
     /// What the pillow gained on cold days over what the gauge caught on them; none where little fell.
     fn ratio(&self) -> Option<f64> {
-        let cold = self.changes().filter(|(day, _, _)| self.weather.mean_c[*day] <= COLD_C);
+        let cold = self.changes().filter(|(day, _, _)| self.is_cold(*day));
         let (gained_mm, fell_mm) = cold.fold((0.0, 0.0), |(gained, fell), (day, before, after)| {
             (gained + (after - before), fell + self.weather.precipitation_mm[day])
         });
@@ -195,10 +210,15 @@ impl<'a> SiteYear<'a> {
 
     fn stuck(&self) -> Option<String> {
         let (mut days, mut fell_mm) = (0, 0.0);
+        let mut follows = 0;
         for (day, before, after) in self.changes() {
+            if day != follows {
+                (days, fell_mm) = (0, 0.0);
+            }
+            follows = day + 1;
             if before > SNOW_MM && after == before {
                 days += 1;
-                if self.weather.mean_c[day] <= COLD_C {
+                if self.is_cold(day) {
                     fell_mm += self.weather.precipitation_mm[day];
                 }
                 if days >= FLAT_DAYS && fell_mm >= FLAT_MM {

@@ -53,5 +53,5 @@ pub use slope::Slope;
 pub use space::{Bounded, Space, Value};
 pub use splits::{Split, Winter, winters_of};
 pub use trials::{Trial, Trials};
-pub use uncertainty::{Interval, ParameterSet, Uncertainty};
+pub use uncertainty::{ParameterRange, ParameterSet, Uncertainty};
 pub use year::{ComparedYear, DayPair, SurveyPair};

@@ -3,7 +3,8 @@
 use super::not_seen::not_seen;
 use super::run::FitResult;
 use super::splits::{Split, Winter, winters_of};
-use serde::{Deserialize, Serialize};
+use serde::de::Error;
+use serde::{Deserialize, Deserializer, Serialize};
 
 /// A site's skill in short. Errors are modelled less observed.
 #[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
@@ -14,31 +15,32 @@ pub struct SkillInShort {
     /// Winters with observed snow.
     pub winters: usize,
     /// Nash-Sutcliffe efficiency of the fit on all winters, which has seen them.
+    #[serde(default, deserialize_with = "some_finite")]
     pub nash_sutcliffe: Option<f64>,
     /// Of the fits on every other winter, each in those that it has not seen.
+    #[serde(default, deserialize_with = "some_finite")]
     pub nash_sutcliffe_not_seen: Option<f64>,
     /// Of the fit on the coldest half of the winters, in the warmest.
+    #[serde(default, deserialize_with = "some_finite")]
     pub nash_sutcliffe_colder_to_warmer: Option<f64>,
     /// Bias of its SWE on the first survey date there, percent.
+    #[serde(default, deserialize_with = "some_finite")]
     pub survey_bias_colder_to_warmer_pct: Option<f64>,
     /// Standard error of that, percent.
+    #[serde(default, deserialize_with = "some_finite")]
     pub survey_bias_standard_error_pct: Option<f64>,
     /// How much warmer the winters of the warmest half are than those of the coldest, degC.
+    #[serde(deserialize_with = "finite")]
     pub halves_apart_c: f64,
 }
 
-impl SkillInShort {
-    /// Whether all of its numbers are finite.
-    pub fn is_finite(&self) -> bool {
-        let scores = [
-            self.nash_sutcliffe,
-            self.nash_sutcliffe_not_seen,
-            self.nash_sutcliffe_colder_to_warmer,
-            self.survey_bias_colder_to_warmer_pct,
-            self.survey_bias_standard_error_pct,
-        ];
-        self.halves_apart_c.is_finite() && scores.into_iter().flatten().all(f64::is_finite)
-    }
+fn finite<'de, D: Deserializer<'de>>(from: D) -> Result<f64, D::Error> {
+    let number = f64::deserialize(from)?;
+    if number.is_finite() { Ok(number) } else { Err(D::Error::custom("a number that is not finite")) }
+}
+
+fn some_finite<'de, D: Deserializer<'de>>(from: D) -> Result<Option<f64>, D::Error> {
+    finite(from).map(Some)
 }
 
 /// Of every site.

@@ -1,4 +1,4 @@
-//! How far other winters might have led a fit: intervals of its parameters, and sets of them that lie apart within these.
+//! How far other winters might have led a fit: ranges of its parameters, and sets of them that lie apart within these.
 //!
 //! The fit is made again on winters drawn anew. Few winters vary too little among themselves, and as many parameters were bent
 //! to them: so the range of these fits is drawn out from the best, as Student's t is wider than the normal distribution.
@@ -13,7 +13,7 @@ use serde::Serialize;
 
 /// Fits to winters drawn anew: with 99, the fifth from either end parts 5 % of what there might be from the rest.
 pub(super) const RESAMPLES: usize = 99;
-/// Of an interval: so much lies below its lower end, and as much above its upper.
+/// Of a range: so much lies below its lower end, and as much above its upper.
 const TAIL: f64 = 0.05;
 
 /// What is known of a fit's uncertainty.
@@ -22,21 +22,21 @@ pub struct Uncertainty {
     /// Fits to winters drawn anew.
     pub resamples: usize,
     /// Of each parameter searched for.
-    pub intervals: Vec<Interval>,
-    /// The fit on all winters, and fits to winters drawn anew that lie within all intervals and far from each other.
+    pub ranges: Vec<ParameterRange>,
+    /// The fit on all winters, and fits to winters drawn anew that lie within all ranges and far from each other.
     pub sets: Vec<ParameterSet>,
 }
 
 /// Where a parameter lies, 90 %.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
-pub struct Interval {
+pub struct ParameterRange {
     /// The scenario's key.
     pub key: &'static str,
     /// Its lower end.
     pub low: f64,
     /// Its upper end.
     pub high: f64,
-    /// Whether an end is a bound of the search: the interval may reach farther.
+    /// Whether an end is a bound of the search: the range may reach farther.
     pub is_at_bound: bool,
 }
 
@@ -49,7 +49,7 @@ pub struct ParameterSet {
     pub objective: f64,
 }
 
-/// Fits to every resample of the winters from the best on all of them, and takes intervals and up to `sets` sets from it.
+/// Fits to every resample of the winters from the best on all of them, and takes ranges and up to `sets` sets from it.
 /// `values` is asked with all winters as searcher 0, and the resamples as those behind.
 ///
 /// # Errors
@@ -86,7 +86,7 @@ pub(super) fn uncertainty<E>(
         values: space.values(&space.at(&asked.point)),
         objective,
     };
-    let interval = |(bounded, [low, high]): (&super::Bounded, &[f64; 2])| Interval {
+    let range = |(bounded, [low, high]): (&super::Bounded, &[f64; 2])| ParameterRange {
         key: bounded.parameter.key,
         low: bounded.value(*low),
         high: bounded.value(*high),
@@ -94,12 +94,12 @@ pub(super) fn uncertainty<E>(
     };
     Ok(Uncertainty {
         resamples: RESAMPLES,
-        intervals: space.searched().iter().zip(&ends).map(interval).collect(),
+        ranges: space.searched().iter().zip(&ends).map(range).collect(),
         sets: asked.into_iter().zip(objectives).map(set).collect(),
     })
 }
 
-/// How many times as far from the best as those of the resampled fits the ends of an interval lie: what Student's t, with as
+/// How many times as far from the best as those of the resampled fits the ends of a range lie: what Student's t, with as
 /// many degrees of freedom as winters more than parameters, is wider than a normal distribution, and `sqrt(n / (n - p))` for
 /// winters to which parameters were bent.
 fn drawn_out(winters: usize, parameters: usize) -> f64 {
@@ -108,7 +108,7 @@ fn drawn_out(winters: usize, parameters: usize) -> f64 {
     bent * student_score_of(1.0 - TAIL, more) / score_of(1.0 - TAIL)
 }
 
-/// The ends of a parameter's interval, as shares of its range. The best lies between them, also where nearly all resamples lie on
+/// The ends of a parameter's range, as shares of its range. The best lies between them, also where nearly all resamples lie on
 /// one side of it.
 fn ends(found: &[Found], at: usize, best: f64, drawn_out: f64) -> [f64; 2] {
     let mut shares: Vec<f64> = found.iter().map(|found| found.point[at]).collect();

@@ -21,7 +21,8 @@ use super::reader::Reader;
 use super::study::{Input, Origin};
 use super::tables::ReportFile;
 use crate::fit::{
-    Bounded, Comparison, FitResult, Fitted, Judged, LeftOut, Objective, Parameters, Split, not_seen,
+    Bounded, Comparison, FitResult, Fitted, Judged, LeftOut, Objective, ParameterRange, Parameters, Split,
+    not_seen,
 };
 use serde::Serialize;
 use std::fmt::Write;
@@ -133,10 +134,8 @@ pub fn fit_in_words(report: &FitReport<'_>) -> String {
     let result = report.result;
     let mut text = String::new();
     for value in &result.fitted[0].values {
-        let interval = result.uncertainty.intervals.iter().find(|interval| interval.key == value.key);
-        let ends = interval.map_or(String::new(), |interval| {
-            format!(" (90 %: {} to {})", fixed(interval.low, 2), fixed(interval.high, 2))
-        });
+        let range = result.uncertainty.ranges.iter().find(|range| range.key == value.key);
+        let ends = range.map_or(String::new(), |range| format!(" ({})", range_in_words(range, 2)));
         let _ = writeln!(text, "  {} = {}{ends}", value.key, rounded(value.value));
     }
     if !result.not_identified.is_empty() {
@@ -147,6 +146,16 @@ pub fn fit_in_words(report: &FitReport<'_>) -> String {
         let _ = writeln!(text, "{sentence}");
     }
     text
+}
+
+/// `range 2.01 to 2.27`; an end at a bound of the search is said, and where both ends are one there is none.
+fn range_in_words(range: &ParameterRange, decimals: usize) -> String {
+    let ParameterRange { low, high, is_at_bound, .. } = *range;
+    if low == high {
+        return "at a bound of the search; no range".to_owned();
+    }
+    let at_bound = if is_at_bound { ", one end at a bound of the search" } else { "" };
+    format!("range {} to {}{at_bound}", fixed(low, decimals), fixed(high, decimals))
 }
 
 /// A sentence a site: what is lost where the climate differs.

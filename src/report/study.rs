@@ -143,6 +143,15 @@ pub struct SetsFrom<'a> {
 }
 
 impl SetsFrom<'_> {
+    /// Keys of which all sets have the same value, as where a fit stopped at a bound; none of a single set.
+    fn never_differ(&self) -> Vec<&'static str> {
+        let Some((first, others)) = self.sets.split_first().filter(|(_, others)| !others.is_empty()) else {
+            return Vec::new();
+        };
+        let is_same = |value: &&Value| others.iter().all(|set| set.contains(value));
+        first.iter().filter(is_same).map(|value| value.key).collect()
+    }
+
     /// What is run, in words.
     pub fn words(&self) -> String {
         let keys: Vec<&str> = self.sets.iter().take(1).flatten().map(|value| value.key).collect();
@@ -151,13 +160,21 @@ impl SetsFrom<'_> {
         } else {
             format!("the first of {} in", self.in_file)
         };
-        format!(
+        let mut words = format!(
             "{} of parameters, {all} {}, with {} of each: {}.",
             counted(self.sets.len(), "set"),
             self.file,
             counted(self.realizations as usize, "realization"),
             keys.join(", ")
-        )
+        );
+        let same = self.never_differ();
+        if !same.is_empty() {
+            words += &format!(
+                " All sets have one value of {}: what another would do is not in this spread.",
+                same.join(", ")
+            );
+        }
+        words
     }
 }
 

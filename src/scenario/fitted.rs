@@ -18,8 +18,6 @@ pub const FITTED_KEY: &str = "snow.fitted";
 
 /// Tables of the file that say how the fit did.
 const SKILL_KEY: &str = "skill";
-/// Head of such a table.
-const HEAD: &str = "[[skill]]";
 
 /// Numbers of `[snow.rain_snow]`: who states one of them states the rule, and no fitted number belongs to it.
 const OF_RAIN_AND_SNOW: [&str; 4] =
@@ -119,14 +117,7 @@ impl Reader<'_> {
     /// The tables of skill; a file that is no TOML is a fault of the document's.
     fn skill(&mut self) -> Vec<SkillInShort> {
         match toml::from_str::<Beside>(self.text) {
-            Ok(beside) => {
-                if !beside.skill.iter().all(SkillInShort::is_finite) {
-                    let bytes = self.text.find(HEAD).map_or(0..0, |at| at..at + HEAD.len());
-                    let mend = "take the line out: what is none has no line".to_owned();
-                    self.fault(bytes, "a skill that is no number".to_owned(), "finite numbers", mend);
-                }
-                beside.skill
-            }
+            Ok(beside) => beside.skill,
             Err(error) => {
                 if let Some(bytes) = error.span() {
                     let expected = "numbers of a fit's skill, as `thawline fit` writes them";
@@ -134,7 +125,7 @@ impl Reader<'_> {
                         bytes,
                         error.message().to_owned(),
                         expected,
-                        "take the [[skill]] tables out".to_owned(),
+                        "fit again, or take the [[skill]] tables out".to_owned(),
                     );
                 }
                 Vec::new()

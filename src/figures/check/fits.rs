@@ -115,7 +115,7 @@ impl Made {
             unfitted: Vec::new(),
             not_identified: flat.collect(),
             profiles,
-            uncertainty: Uncertainty { resamples: 0, intervals: Vec::new(), sets: Vec::new() },
+            uncertainty: Uncertainty { resamples: 0, ranges: Vec::new(), sets: Vec::new() },
             tried: 1,
         }
     }

@@ -53,7 +53,7 @@ fn rules(weather: &Series, reading: impl Fn(usize) -> f64) -> Vec<(i32, Rule)> {
     };
     let observations = Observations { kind: Kind::Pillow, counts, suspicions: Vec::new(), states };
     let site = Site { name: "pillow", elevation_m: 2500.0, observations: &observations };
-    let found = left_out(&[site], weather);
+    let found = left_out(&[site], weather, 2500.0);
     let remaining = without(&site, &found, weather).expect("seven winters");
     let is_left = |water_year: i32| remaining.states.iter().any(|state| state.date == first(water_year));
     for water_year in 2001..2001 + YEARS {
@@ -92,6 +92,45 @@ fn a_pillow_that_reads_the_same_while_it_snows() {
     };
     assert_eq!(stuck(73), []);
     assert_eq!(stuck(75), [(2004, Rule::PillowStuck)]);
+}
+
+/// Twice six days of one reading, with days without a reading between them, are no twelve of one; nor are six of one and six of
+/// another with a gap between.
+#[test]
+fn a_gap_ends_what_reads_the_same() {
+    let weather = weather();
+    let of_2004 = weather.years[3];
+    let year = |observed: Vec<Option<f64>>| SiteYear {
+        span: &weather.years[3],
+        weather: weather.view(&of_2004),
+        observed,
+        is_daily: true,
+        warmer_c: 0.0,
+    };
+    let reads = |gap: std::ops::Range<usize>| {
+        let mut days: Vec<Option<f64>> = (0..40).map(|_| Some(200.0)).collect();
+        days[gap].fill(None);
+        days
+    };
+    // 4 mm fall every other day: 14 days bring 28 mm.
+    assert!(year(reads(0..0)).stuck().is_some());
+    assert!(year(reads(13..30)).stuck().is_none(), "12 days, a gap, 9 days");
+    assert!(year(reads(13..14)).stuck().is_some(), "25 days after the gap");
+}
+
+/// Of days with -8 degC at the gauge, those 700 m below have -3.45, cold enough, and those 1000 m below -1.5, at which snow may melt.
+#[test]
+fn what_is_cold_at_the_gauge_may_thaw_at_the_pillow() {
+    let weather = weather();
+    let year = |warmer_c: f64| SiteYear {
+        span: &weather.years[0],
+        weather: weather.view(&weather.years[0]),
+        observed: (0..365).map(|day| Some(pillow_mm(day))).collect(),
+        is_daily: true,
+        warmer_c,
+    };
+    assert!(year(4.55).ratio().is_some());
+    assert!(year(6.5).ratio().is_none());
 }
 
 /// 45 mm in a day of which 4 mm fell, and 8 mm more two days before and after, are a jump; 35 mm are not.
@@ -137,6 +176,10 @@ fn temperatures_that_the_place_does_not_have() {
     };
     assert_eq!(with_cold_days(&weather(), 1), []);
     assert_eq!(with_cold_days(&weather(), 2), [(2004, Rule::TemperatureFar)]);
+    let mut means = weather();
+    means.half_range_c.fill(0.0);
+    assert_eq!(with_cold_days(&means, 2), [], "two means are gross errors of two days");
+    assert_eq!(with_cold_days(&means, 3), [(2004, Rule::TemperatureFar)]);
     let mut continental = weather();
     for (day, mean_c) in continental.mean_c.iter_mut().enumerate() {
         *mean_c -= f64::from((day % 5) as u8) * 8.0;

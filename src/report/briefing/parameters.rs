@@ -27,7 +27,7 @@ fn table(found: &MeasureBySet, reader: Reader) -> Markup {
     html! { div.scroll { table {
         caption {
             "What moves the " (found.measure.title) ", " (depth) ": the study's own shift; the half of the reference's 5–95 % range over realizations that it \
-             points to; and how far the sets' medians at the reference reach that way from the one in their middle, the farthest set included. The sets are chosen to \
+             points to; and how far the sets' medians at the reference reach that way from the study's own over the same realizations, the farthest set included. The sets are chosen to \
              lie apart, so that their range is no range of chances."
         }
         thead { tr {

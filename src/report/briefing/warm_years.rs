@@ -1,31 +1,43 @@
 //! What the fit says of itself: skill in winters seen and not seen, and its error in warm ones beside the warming's effect.
 
 use super::super::numbers::{DASH, fixed, signed};
-use super::super::reader::Reader;
 use super::super::study::Study;
-use crate::findings::WarmYearBias;
+use crate::findings::{BiasVerdict, WarmYearBias};
 use crate::fit::SkillInShort;
 use maud::{Markup, html};
 
 /// Where the section stands.
 const ADDRESS: &str = "fitted";
 
-/// A sentence under the title where the error is comparable with the effect; else nothing.
+/// A sentence under the title where the error is comparable with the effect, or may be; else nothing.
 pub(super) fn in_short(study: &Study<'_>) -> Markup {
-    let is_comparable = study.findings.warm_year_biases.iter().any(|found| found.is_comparable);
-    html! { @if is_comparable {
-        " In winters warmer than it was fitted on the model's own error is comparable with the effect of warming: "
-        a href=(format!("#{ADDRESS}")) { "see by how much" } "."
+    let has =
+        |verdict: BiasVerdict| study.findings.warm_year_biases.iter().any(|found| found.verdict == verdict);
+    let words = if has(BiasVerdict::Comparable) {
+        Some("the model's own error is comparable with the effect of warming")
+    } else if has(BiasVerdict::CannotTell) {
+        Some(
+            "the model's own error may be comparable with the effect of warming: what was observed cannot tell",
+        )
+    } else {
+        None
+    };
+    html! { @if let Some(words) = words {
+        " In winters warmer than it was fitted on " (words) " (" a href=(format!("#{ADDRESS}")) { "see how far" } ")."
     } }
 }
 
-/// The section; nothing where no fit says how it did.
+/// The section; nothing where no fit says how it did, or nothing of it is in force.
 pub(super) fn section(study: &Study<'_>) -> Markup {
-    let skill = study.fitted.map_or(&[][..], |fitted| fitted.skill);
-    html! { @if !skill.is_empty() {
+    let fitted = study.fitted.filter(|fitted| !fitted.taken.is_empty() && !fitted.skill.is_empty());
+    html! { @if let Some(fitted) = fitted {
         h2 id=(ADDRESS) { "How the fit did" }
-        @for found in &study.findings.warm_year_biases { p { (beside_the_effect(found, study.reader)) } }
-        (table(skill))
+        @if !fitted.left.is_empty() { p {
+            "This study takes only a part of what was fitted, so that it runs another model than the one whose skill stands here: its own error in warm \
+             winters is not known."
+        } }
+        @for found in &study.findings.warm_year_biases { p { (beside_the_effect(found, study)) } }
+        (table(fitted.skill))
         p {
             "NSE is the Nash-Sutcliffe efficiency of daily SWE at the sites that it was fitted to, as its file has it. Not seen: each winter modelled by \
              the fit on every other one that it is not among. Colder to warmer: fitted on the coldest half of the winters, judged on the warmest; a model \
@@ -34,26 +46,34 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
     } }
 }
 
-fn beside_the_effect(found: &WarmYearBias, reader: Reader) -> String {
-    let error = found
-        .standard_error_pct
-        .map_or(String::new(), |error| format!(", standard error {} %", fixed(error, 1)));
+fn beside_the_effect(found: &WarmYearBias, study: &Study<'_>) -> String {
+    let error =
+        found.standard_error_pct.map_or(", too few winters for a standard error".to_owned(), |error| {
+            format!(", standard error {} %", fixed(error, 1))
+        });
+    let title = study.findings.basin.first().map_or("measure", |headline| headline.measure.title.as_str());
+    let effect = found.effect_pct.map_or(" No level of this study is as warm.".to_owned(), |effect| {
+        format!(
+            " As much warming changes the basin's {title} by {} %, on a straight line between levels.",
+            signed(effect, 1)
+        )
+    });
     let share = found
         .share
-        .map_or(String::new(), |share| format!(": the error is {} of the effect in size", fixed(share, 2)));
-    let verdict = if found.is_comparable {
-        "The two are comparable, and the effect is no surer than that."
-    } else {
-        "That is less than half."
+        .map_or(String::new(), |share| format!(" The error is {} of the effect in size.", fixed(share, 2)));
+    let verdict = match found.verdict {
+        BiasVerdict::Comparable => "The two are comparable, and the effect is no surer than that.",
+        BiasVerdict::CannotTell => {
+            "Whether it is less than half of the effect cannot be told: two standard errors more would be half of it, or one of these numbers is not there."
+        }
+        BiasVerdict::Smaller => "That is less than half, also if it were two standard errors more.",
     };
     format!(
-        "{}: fitted on the coldest half of the winters, SWE on the survey date is off by {} % (modelled less observed{error}) in the warmest half, whose winters \
-         are {} warmer. Warming by {} changes it by {} %{share}. {verdict}",
+        "{}: fitted on the coldest half of the winters, the site's SWE on the survey date is off by {} % (modelled less observed{error}) in the warmest half, \
+         whose winters are {} warmer.{effect}{share} {verdict}",
         found.site,
         signed(found.bias_pct, 1),
-        reader.difference(found.halves_apart_c),
-        reader.level(found.level_c),
-        signed(found.effect_pct, 1)
+        study.reader.difference(found.halves_apart_c)
     )
 }
 

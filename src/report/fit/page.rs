@@ -49,7 +49,7 @@ pub(super) fn page(report: &FitReport<'_>, drawn: &Drawn) -> Vec<u8> {
         h2 { "Parameters" }
         @for figure in drawn.of(FitPart::Parameters) { (page::figure(figure)) }
         (values::tables(report))
-        p { (values::of_intervals(report)) }
+        p { (values::of_ranges(report)) }
         p {
             "Searched for by dynamically dimensioned search (Tolson & Shoemaker 2007) from " (counted(report.starts, "start")) " of "
             (counted(report.evaluations, "set")) " a split, the first at the scenario's own values, and refined by a climb along the parabola through the points around the best. A profile holds one parameter at nine values \

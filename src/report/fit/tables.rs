@@ -41,9 +41,9 @@ pub(super) fn parameters(report: &FitReport<'_>) -> Vec<u8> {
         "scenario",
         "identified",
         "profile_falls_by",
-        "interval_low",
-        "interval_high",
-        "interval_ends_at_bound",
+        "range_low",
+        "range_high",
+        "range_ends_at_bound",
     ];
     let splits = report
         .result
@@ -66,12 +66,11 @@ pub(super) fn parameters(report: &FitReport<'_>) -> Vec<u8> {
             yes_or_no(profile.is_identified).to_owned(),
             optional(Some(profile.fall)),
         ];
-        let interval =
-            report.result.uncertainty.intervals.iter().find(|interval| interval.key == profile.key);
+        let range = report.result.uncertainty.ranges.iter().find(|range| range.key == profile.key);
         row.extend([
-            optional(interval.map(|interval| interval.low)),
-            optional(interval.map(|interval| interval.high)),
-            interval.map_or(String::new(), |interval| yes_or_no(interval.is_at_bound)),
+            optional(range.map(|range| range.low)),
+            optional(range.map(|range| range.high)),
+            range.map_or(String::new(), |range| yes_or_no(range.is_at_bound)),
         ]);
         let of_split = report.result.fitted.iter().map(|fitted| bounded.parameter.get(&fitted.parameters));
         row.extend(of_split.map(optional));

@@ -11,9 +11,9 @@ pub(super) fn parameter_spread(spread: &ParameterSpread, units: UnitSystem) -> V
     let mut header =
         ["measure", "unit", "unit_of_change", "sets", "realizations_of_each"].map(str::to_owned).to_vec();
     header.push(format!("level_{}", units.warming().suffix));
+    header.push("reference_median_own".to_owned());
     for number in ["reference_median", "change", "change_pct"] {
-        header
-            .extend(["lowest", "q10", "q50", "q90", "highest"].map(|end| format!("{number}_{end}_of_sets")));
+        header.extend(["lowest", "highest"].map(|end| format!("{number}_{end}_of_sets")));
     }
     header.extend(
         [
@@ -42,6 +42,7 @@ pub(super) fn parameter_spread(spread: &ParameterSpread, units: UnitSystem) -> V
                 spread.realizations.to_string(),
                 units.warming().of(level.level_c).to_string(),
             ];
+            row.push(optional(Some(told.in_units(found.own_reference))));
             row.extend(over_sets(Some(found.reference), |value| told.in_units(value)));
             row.extend(over_sets(Some(level.shift), |value| told.in_units(value)));
             row.extend(over_sets(level.percent_change, |percent| percent));
@@ -60,10 +61,9 @@ pub(super) fn parameter_spread(spread: &ParameterSpread, units: UnitSystem) -> V
     finish(writer)
 }
 
-fn over_sets(found: Option<OverSets>, told: impl Fn(f64) -> f64) -> [String; 5] {
-    let numbers =
-        found.map(|found| [Some(found.lowest), found.q10, Some(found.q50), found.q90, Some(found.highest)]);
-    numbers.unwrap_or_default().map(|number| optional(number.map(&told)))
+fn over_sets(found: Option<OverSets>, told: impl Fn(f64) -> f64) -> [String; 2] {
+    let ends = found.map(|found| [found.lowest, found.highest].map(|end| optional(Some(told(end)))));
+    ends.unwrap_or_default()
 }
 
 fn word(mover: Mover) -> &'static str {
