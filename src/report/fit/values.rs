@@ -54,7 +54,8 @@ fn on_halves(report: &FitReport<'_>, rows: &[(&Profile, &Bounded)]) -> Markup {
 
 fn range(report: &FitReport<'_>, key: &str) -> String {
     let found = report.result.uncertainty.ranges.iter().find(|range| range.key == key);
-    found.map_or(DASH.to_owned(), |found| range_in_words(found, 3))
+    // The column is headed so.
+    found.map_or(DASH.to_owned(), |found| range_in_words(found, 3).trim_start_matches("range ").to_owned())
 }
 
 /// Where ranges and sets come from.
