@@ -102,6 +102,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
         starts: plan.starts,
         evaluations: plan.evaluations,
         left_out: &left_out,
+        cool_temperature: ready.baseline.as_ref().and_then(|baseline| baseline.cool_temperature.as_ref()),
         result: &result,
         origin: ready.origin("fit", path, shared),
     };

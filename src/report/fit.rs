@@ -8,6 +8,7 @@ mod page;
 mod parameter_sets;
 mod parameters;
 mod tables;
+mod temperature_step;
 mod values;
 mod winters;
 
@@ -20,12 +21,14 @@ use super::observed::observed_tables;
 use super::reader::Reader;
 use super::study::{Input, Origin};
 use super::tables::ReportFile;
+use crate::baseline::YearlyTests;
 use crate::fit::{
     Bounded, Comparison, FitResult, Fitted, Judged, LeftOut, Objective, ParameterRange, Parameters, Split,
     not_seen,
 };
 use serde::Serialize;
 use std::fmt::Write;
+use temperature_step::temperature_step;
 
 /// The file of fitted parameters.
 pub(super) const PARAMETERS_FILE: &str = "parameters.toml";
@@ -50,6 +53,8 @@ pub struct FitReport<'a> {
     pub evaluations: usize,
     /// Winters that were left out.
     pub left_out: &'a [LeftOut],
+    /// Trends and steps of the cool season's temperature, where there are years enough.
+    pub cool_temperature: Option<&'a YearlyTests>,
     /// What was found.
     pub result: &'a FitResult,
     /// How it is repeated, and from what.
@@ -158,13 +163,14 @@ fn range_in_words(range: &ParameterRange, decimals: usize) -> String {
     format!("range {} to {}{at_bound}", fixed(low, decimals), fixed(high, decimals))
 }
 
-/// A sentence a site: what is lost where the climate differs.
+/// A sentence a site: what is lost where the climate differs; and a step in the temperatures by which it does.
 fn of_other_years(report: &FitReport<'_>) -> Vec<String> {
     let fitted = &report.result.fitted;
     let of = |split: Split| fitted.iter().find(|fitted| fitted.split == split);
     let (Some(cold), Some(warm)) = (of(Split::Coldest), of(Split::Warmest)) else { return Vec::new() };
     let sites = cold.on_others.iter().zip(&warm.on_own).zip(&warm.on_others);
-    sites.map(|((on_warm, warm_own), on_cold)| of_a_site(on_warm, warm_own, on_cold)).collect()
+    let of_sites = sites.map(|((on_warm, warm_own), on_cold)| of_a_site(on_warm, warm_own, on_cold));
+    of_sites.chain(temperature_step(report.reader, report.cool_temperature, &report.result.winters)).collect()
 }
 
 fn of_a_site(on_warm: &Judged, warm_own: &Judged, on_cold: &Judged) -> String {

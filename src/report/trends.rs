@@ -102,6 +102,11 @@ fn trend(tests: &YearlyTests) -> String {
     )
 }
 
+/// The step of a season's temperatures, as [`step`] has it.
+pub(super) fn step_in_words(reader: Reader, tests: &YearlyTests) -> String {
+    step(tests, &Scale::degrees(reader))
+}
+
 /// `Pettitt p = 0.01: a step after 1999, by +0.9 °C`.
 fn step(tests: &YearlyTests, scale: &Scale) -> String {
     let pettitt = &tests.pettitt;

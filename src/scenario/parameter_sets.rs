@@ -15,7 +15,7 @@ use crate::table::{Format, Table, Tally};
 /// The key that names the file.
 pub const PARAMETER_SETS_KEY: &str = "snow.parameter_sets.file";
 /// Realizations that are run of each set, unless more or fewer are stated or the study has fewer.
-const REALIZATIONS: u64 = 100;
+const REALIZATIONS: u32 = 100;
 /// A file of more sets is a file of something else.
 const MOST_SETS: usize = 1000;
 /// Of a set, what it scored in its fit: no parameter, and not read.
@@ -28,8 +28,8 @@ pub struct ParameterSetsTyped {
     pub file: String,
     /// How many of its sets are run, the first; all where none is stated.
     pub count: Option<usize>,
-    /// Realizations of each, at most as many as the study has.
-    pub realizations: u32,
+    /// Realizations of each, where stated.
+    pub realizations: Option<u32>,
 }
 
 /// Sets of parameters that are run.
@@ -66,7 +66,14 @@ pub(super) fn read(snow: &mut Section<'_>) -> Option<ParameterSetsTyped> {
         section.default("count", "all sets of the file");
         None
     };
-    let realizations = section.whole_or("realizations", REALIZATIONS, 2..=100_000) as u32;
+    let realizations = if section.has("realizations") {
+        let stated = section.whole_in("realizations", 2..=100_000, u64::from(REALIZATIONS));
+        stated.map(|realizations| realizations as u32)
+    } else {
+        section.knows("realizations");
+        section.default("realizations", "100, or all of the study's where it has fewer");
+        None
+    };
     section.finish();
     Some(ParameterSetsTyped { file: file?, count, realizations })
 }
@@ -191,6 +198,14 @@ impl Draft {
                 "take fewer, or fit again with a larger fit.parameter_sets",
             ));
         }
+        if let Some(asked) = typed.realizations.filter(|asked| *asked > realizations.count) {
+            faults.push(Fault::key(
+                "snow.parameter_sets.realizations",
+                asked,
+                format!("at most the study's own {}, which the sets share", realizations.count),
+                "take fewer, or raise realizations.count",
+            ));
+        }
         if !faults.is_empty() {
             return Err(faults);
         }
@@ -212,7 +227,7 @@ impl Draft {
             first_is_own: parameters.first() == Some(&own),
             values,
             parameters,
-            realizations: typed.realizations.min(realizations.count),
+            realizations: typed.realizations.unwrap_or(REALIZATIONS).min(realizations.count),
         }))
     }
 }

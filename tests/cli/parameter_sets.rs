@@ -142,4 +142,9 @@ fn what_cannot_be_run_is_refused() {
         plain,
         &["a whole number from 2"],
     );
+    refused(
+        "\n[snow.parameter_sets]\nfile = \"sets.csv\"\nrealizations = 90000\n",
+        plain,
+        &["90000", "which the sets share", "raise realizations.count"],
+    );
 }
