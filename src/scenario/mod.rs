@@ -9,6 +9,7 @@ mod days;
 mod document;
 mod draw;
 mod elevation;
+mod findings;
 mod fit;
 mod fitted;
 mod format;
@@ -34,6 +35,7 @@ mod weather;
 pub use basin::BasinTyped;
 pub use document::Document;
 pub use draw::{Drawing, Located, draw, located, unlikely_lines};
+pub use findings::FindingsTyped;
 pub use fit::FitTyped;
 pub use fitted::{FITTED_KEY, Fitted, read_fitted};
 pub use hypsometry::HypsometryTyped;
@@ -80,6 +82,8 @@ pub struct Scenario {
     pub observed: Vec<ObservedTyped>,
     /// How the model is fitted to it.
     pub fit: FitTyped,
+    /// What is asked beside the headline.
+    pub findings: FindingsTyped,
 }
 
 /// What could be read of a scenario, part by part: a part with a fault is missing, the others can still be used to look
@@ -118,6 +122,8 @@ pub struct Draft {
     pub observed: Vec<Option<ObservedTyped>>,
     /// `[fit]`.
     pub fit: Option<FitTyped>,
+    /// `[findings]`, a table a question.
+    pub findings: Option<FindingsTyped>,
     /// Every fault of the text.
     pub faults: Vec<Fault>,
     /// What is allowed but unlikely.
@@ -141,6 +147,7 @@ impl Draft {
             report: self.report?,
             observed: self.observed.iter().cloned().collect::<Option<_>>()?,
             fit: self.fit.clone()?,
+            findings: self.findings.clone()?,
         })
     }
 }
@@ -182,6 +189,7 @@ pub fn read(document: &Document<'_>) -> Draft {
         top.knows("fit");
         Some(FitTyped::default())
     };
+    let findings = findings::read(top.section("findings"));
     top.finish();
     let parts = (
         hypsometry,
@@ -199,6 +207,7 @@ pub fn read(document: &Document<'_>) -> Draft {
     let mut draft = notes.into_draft(title, seed, parts);
     draft.fitted_file = fitted_file;
     draft.parameter_sets = parameter_sets;
+    draft.findings = findings;
     document.keep_what_is_certain(&mut draft.faults);
     draft
 }

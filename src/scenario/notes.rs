@@ -64,6 +64,7 @@ impl Notes {
             report,
             observed,
             fit,
+            findings: None,
             faults: self.faults.into_inner(),
             unlikely: self.unlikely.into_inner(),
             defaults: self.defaults.into_inner(),
