@@ -11,8 +11,8 @@ use crate::defaults::DefaultInForce;
 use crate::fault::Fault;
 use crate::observed::Observations;
 use crate::scenario::{
-    Document, Draft, FITTED_KEY, Fitted, ObservedTyped, PARAMETER_SETS_KEY, ParameterSets, read_fitted,
-    read_parameter_sets,
+    Document, Draft, FITTED_KEY, Fitted, ObservedTyped, PARAMETER_SETS_KEY, PROJECTIONS_KEY, ParameterSets,
+    read_fitted, read_parameter_sets, read_projections,
 };
 use crate::snow::{StationPhase, correct_catch};
 use crate::table::Encoding;
@@ -32,6 +32,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
     let mut faults = std::mem::take(&mut draft.faults);
     let fitted = take(read_fitted_of(&mut draft, &document, &folder), &mut faults).flatten();
     let parameter_sets = take(read_parameter_sets_of(&draft, &document, &folder), &mut faults).flatten();
+    let projections = take(read_projections_of(&draft, &folder), &mut faults).flatten();
     let bands = take(read_bands_of(&draft, &folder), &mut faults).flatten();
     let record = take(read_record_of(&draft, &folder), &mut faults).flatten();
     let observed = read_observed_of(&draft, &folder, &mut faults);
@@ -40,6 +41,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             key if key.starts_with("basin.") => draft.hypsometry.is_some(),
             FITTED_KEY => true,
             PARAMETER_SETS_KEY => draft.parameter_sets.is_some(),
+            PROJECTIONS_KEY => true,
             "weather.file" => draft.record_source.is_some() && draft.season.is_some(),
             of_site => draft.observed.iter().flatten().any(|site| of_site == file_key(site)),
         };
@@ -112,6 +114,10 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             let (parameter_sets, sets_file) = parameter_sets.unzip();
             files.extend(sets_file);
             unlikely.extend(parameter_sets.iter().filter_map(ParameterSets::unlikely));
+            let mut named_changes = scenario.findings.cases.clone();
+            let (projections, projections_file) = projections.unzip();
+            files.extend(projections_file);
+            named_changes.extend(projections.unwrap_or_default());
             let mut defaults = draft.defaults;
             note_baseline_years(&baseline_years, &mut defaults);
             let mut ready = Ready {
@@ -129,6 +135,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 observed: observations,
                 fitted,
                 parameter_sets,
+                named_changes,
                 files,
                 stem,
             };
@@ -242,6 +249,19 @@ fn read_parameter_sets_of(
         read_data(folder, &typed.file, PARAMETER_SETS_KEY, Encoding::Utf8).map_err(|fault| vec![fault])?;
     let sets = read_parameter_sets(&file.name, &file.text)?;
     Ok(draft.parameter_sets(&sets, document)?.map(|sets| (sets, file)))
+}
+
+/// Reads the file of projections.
+fn read_projections_of(
+    draft: &Draft,
+    folder: &Path,
+) -> Result<Option<(Vec<NamedChange>, InputFile)>, Vec<Fault>> {
+    let Some(name) = &draft.projections_file else {
+        return Ok(None);
+    };
+    let file = read_data(folder, name, PROJECTIONS_KEY, Encoding::Utf8).map_err(|fault| vec![fault])?;
+    let projections = read_projections(&file.name, &file.text)?;
+    Ok(Some((projections, file)))
 }
 
 fn file_key(site: &ObservedTyped) -> String {

@@ -1,19 +1,84 @@
-//! Break-even precipitation by root finding on runs, and how wet periods have been.
+//! Break-even precipitation by root finding on runs.
 
 use super::level_groups::LevelGroups;
 use super::ready::Ready;
-use crate::baseline::Seasons as SeasonsOf;
+use super::wetness::Wetness;
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, Watch, run_records};
-use crate::findings::{BreakEven, BreakEvenLevel, Reached, Root, break_even_pct, quantile, sorted};
-use crate::perturb::{Generator, Kept, MeanChange, MonthlyChange};
+use crate::findings::{BreakEven, Root, break_even_pct, quantile, sorted};
+use crate::perturb::{Generator, MonthlyChange};
 use crate::season::Measures;
-use crate::weather::Series;
 
-/// Realizations that are run for it at most, the first of the study.
-const BREAK_EVEN_REALIZATIONS: u32 = 100;
+/// Where the precipitation is looked for that makes up for a warming: the plan's realizations under each of the groups'
+/// changes with one more factor on all precipitation. No change of its mean is assumed in them.
+pub(super) struct Search<'a> {
+    /// What is run: its groups are not used, its reference is one of the changes below.
+    pub plan: Plan<'a>,
+    pub groups: &'a LevelGroups<'a>,
+    pub made: &'a dyn Generator,
+    pub watch: &'a dyn Watch,
+}
 
-/// Finds the break-even precipitation of the headline measure at every level: the same realizations, no change of mean
-/// precipitation assumed in them, under each level with one more factor on all precipitation.
+/// The reference's median, and the root of every other level.
+pub(super) struct Roots {
+    pub reference_median: f64,
+    pub of_levels: Vec<(usize, Root)>,
+}
+
+impl Search<'_> {
+    /// Finds all roots. `known` tells the median of a level under a change that has been run, so that it is not run again.
+    ///
+    /// # Errors
+    /// Those of a run.
+    pub fn roots(&self, known: impl Fn(usize, f64) -> Option<f64>) -> Result<Roots, Halt> {
+        let reference = self.plan.reference;
+        let levels: Vec<usize> = (0..self.groups.changes.len()).filter(|level| *level != reference).collect();
+        let reference_median = match known(reference, 0.0) {
+            Some(median) => median,
+            None => self.medians(&[(reference, 0.0)])?[0],
+        };
+        let roots = break_even_pct(levels.len(), |asked| {
+            let asked: Vec<(usize, f64)> = asked.iter().map(|(at, pct)| (levels[*at], *pct)).collect();
+            let is_new = |(level, pct): &&(usize, f64)| known(*level, *pct).is_none();
+            let unknown: Vec<(usize, f64)> = asked.iter().filter(is_new).copied().collect();
+            let mut run = if unknown.is_empty() { Vec::new() } else { self.medians(&unknown)? }.into_iter();
+            let median = |(level, pct): &(usize, f64)| known(*level, *pct).or_else(|| run.next());
+            let medians = asked.iter().map(median);
+            let excess = medians.map(|median| median.map_or(f64::NAN, |median| median - reference_median));
+            Ok::<_, Halt>(excess.collect())
+        })?;
+        Ok(Roots { reference_median, of_levels: levels.into_iter().zip(roots).collect() })
+    }
+
+    /// The median period value of the headline measure at each of these levels, in ascending order, each with so many percent
+    /// more precipitation.
+    fn medians(&self, asked: &[(usize, f64)]) -> Result<Vec<f64>, Halt> {
+        let change = |level: usize, pct: f64| (level, self.groups.changes[level].with_precipitation(pct));
+        let mut levels: Vec<(usize, MonthlyChange)> =
+            asked.iter().map(|(level, pct)| change(*level, *pct)).collect();
+        // The reference runs with them: it decides about perennial snow.
+        let at = levels.partition_point(|(level, _)| *level < self.plan.reference);
+        let is_asked = levels.get(at).is_some_and(|(level, _)| *level == self.plan.reference);
+        if !is_asked {
+            levels.insert(at, change(self.plan.reference, 0.0));
+        }
+        let weather = self.groups.weather(self.made);
+        let lanes = self.groups.lanes_of(&levels);
+        let of_group = |(group, lanes)| LevelGroup { lanes, generator: &weather[*group] };
+        let groups: Vec<LevelGroup<'_>> =
+            lanes.iter().map(|(group, lanes)| of_group((group, lanes))).collect();
+        let plan = Plan { groups: &groups, reference: at, ..self.plan };
+        let unchanged: Vec<&dyn Generator> = groups.iter().map(|group| group.generator).collect();
+        let seasons: Vec<BasinSeasons> = run_records(&plan, &[unchanged], self.watch)?.collect();
+        let median = |level: usize| {
+            let periods = seasons[0].periods.index_axis(ndarray::Axis(0), level);
+            quantile(&sorted(periods.row(0).iter().copied()), 0.5)
+        };
+        let wanted = (0..levels.len()).filter(|level| is_asked || *level != at);
+        Ok(wanted.map(median).collect())
+    }
+}
+
+/// Finds the break-even precipitation of the headline measure at every level; `known` as in [`Search::roots`].
 ///
 /// # Errors
 /// Those of a run.
@@ -22,120 +87,18 @@ pub(super) fn break_even(
     plan: &Plan<'_>,
     groups: &LevelGroups<'_>,
     made: &dyn Generator,
+    (wetness, known): (&Wetness, impl Fn(usize, f64) -> Option<f64>),
     watch: &dyn Watch,
 ) -> Result<BreakEven, Halt> {
-    let all = plan.realizations;
-    let changes = &groups.changes;
-    let realizations = plan.realizations.min(BREAK_EVEN_REALIZATIONS);
-    // Every step towards the root runs them again.
-    let kept = Kept::of(made, realizations, plan.years);
-    let weather = groups.weather(&kept);
     let measures = Measures::of_snow(plan.measures.settings().clone(), ready.basin.area_km2());
-    let plan = Plan { realizations, measures: &measures, ..*plan };
-    let medians = |pct: &[f64]| {
-        let mut scaled: Vec<MonthlyChange> =
-            changes.iter().zip(pct).map(|(change, pct)| change.with_precipitation(*pct)).collect();
-        // The reference stays: it is what is to be regained, and decides about perennial snow.
-        scaled[plan.reference] = changes[plan.reference].clone();
-        let lanes = groups.lanes(&scaled);
-        let of_groups: Vec<LevelGroup<'_>> =
-            lanes.iter().zip(&weather).map(|(lanes, generator)| LevelGroup { lanes, generator }).collect();
-        let plan = Plan { groups: &of_groups, ..plan };
-        let unchanged: Vec<&dyn Generator> = weather.iter().map(|of_group| of_group as _).collect();
-        let seasons: Vec<BasinSeasons> = run_records(&plan, &[unchanged], watch)?.collect();
-        let of = |level: usize| {
-            let periods = seasons[0].periods.index_axis(ndarray::Axis(0), level);
-            quantile(&sorted(periods.row(0).iter().copied()), 0.5)
-        };
-        Ok::<_, Halt>((0..changes.len()).map(of).collect::<Vec<f64>>())
-    };
-    let no_change = vec![0.0; changes.len()];
-    let unchanged_medians = medians(&no_change)?;
-    let reference_median = unchanged_medians[plan.reference];
-    let roots = break_even_pct(changes.len(), |pct| {
-        let medians = if pct == no_change { unchanged_medians.clone() } else { medians(pct)? };
-        Ok::<_, Halt>(medians.into_iter().map(|median| median - reference_median).collect())
-    })?;
-    let survey = ready.scenario.season.survey_dates[0];
-    let generator = MeanChange {
-        generator: made,
-        seed: ready.scenario.seed,
-        standard_deviation_pct: ready.scenario.realizations.mean_change_sd_pct.unwrap_or(0.0),
-    };
-    let wetness = Wetness::of(&ready.drawn_from, &generator, [all as usize, plan.years], survey, watch)?;
+    let plan = Plan { measures: &measures, ..*plan };
+    let roots = Search { plan, groups, made, watch }.roots(known)?;
     let levels_c = &ready.scenario.warming.levels_c;
-    let levels = levels_c.iter().zip(roots).enumerate().filter(|(level, _)| *level != plan.reference);
+    let level = |(level, root): (usize, Root)| wetness.level(levels_c[level], root);
     Ok(BreakEven {
         realizations: plan.realizations as usize,
-        reference_median,
-        levels: levels.map(|(_, (level_c, root))| wetness.level(*level_c, root)).collect(),
+        reference_median: roots.reference_median,
+        levels: roots.of_levels.into_iter().map(level).collect(),
         reached: wetness.reached(plan.years),
     })
-}
-
-/// Mean precipitation of the record's and the realizations' periods, percent above the record's mean: of the cool season,
-/// or of whole years where the first survey date leaves no season before it.
-struct Wetness {
-    is_of_whole_years: bool,
-    realizations_pct: Vec<f64>,
-    record_wettest_pct: Option<f64>,
-}
-
-impl Wetness {
-    fn of(
-        record: &Series,
-        generator: &dyn Generator,
-        [realizations, years]: [usize; 2],
-        survey: crate::calendar::MonthDay,
-        watch: &dyn Watch,
-    ) -> Result<Self, Halt> {
-        let mean = |values: &[(i32, f64)]| values.iter().map(|(_, mm)| mm).sum::<f64>() / values.len() as f64;
-        let is_of_whole_years = SeasonsOf::of(record, survey).cool.precipitation_mm.is_empty();
-        let of = |series: &Series| {
-            let seasons = SeasonsOf::of(series, survey);
-            if is_of_whole_years { seasons.warm.precipitation_mm } else { seasons.cool.precipitation_mm }
-        };
-        let record = of(record);
-        let record_mm = mean(&record);
-        let above = |values: &[(i32, f64)]| 100.0 * (mean(values) / record_mm - 1.0);
-        let mut series = Series::default();
-        let mut realizations_pct = Vec::with_capacity(realizations);
-        for number in 0..realizations as u32 {
-            if watch.wants_stop() {
-                return Err(Halt::Stopped);
-            }
-            generator.fill(number, years, &mut series);
-            realizations_pct.push(above(&of(&series)));
-        }
-        let record_wettest_pct = record.windows(years).map(above).max_by(f64::total_cmp);
-        Ok(Self { is_of_whole_years, realizations_pct, record_wettest_pct })
-    }
-
-    fn level(&self, level_c: f64, root: Root) -> BreakEvenLevel {
-        let (precipitation_change_pct, stays) = match root {
-            Root::At(pct) => (Some(pct), None),
-            Root::Stays(stays) => (None, Some(stays)),
-            Root::Unknown => (None, None),
-        };
-        let reached = |pct: f64| self.realizations_pct.iter().filter(|wetness| **wetness >= pct).count();
-        BreakEvenLevel {
-            level_c,
-            precipitation_change_pct,
-            stays,
-            realizations_that_reached: precipitation_change_pct.map_or(0, reached),
-            record_reached: self
-                .record_wettest_pct
-                .map(|wettest| precipitation_change_pct.is_some_and(|needed| wettest >= needed)),
-        }
-    }
-
-    fn reached(&self, years: usize) -> Reached {
-        Reached {
-            years,
-            is_of_whole_years: self.is_of_whole_years,
-            record_wettest_pct: self.record_wettest_pct,
-            realizations_wettest_pct: self.realizations_pct.iter().copied().fold(f64::NEG_INFINITY, f64::max),
-            realizations: self.realizations_pct.len(),
-        }
-    }
 }

@@ -35,6 +35,23 @@ impl<'r> LevelGroups<'r> {
         }
     }
 
+    /// One group of changes that leave wet days as they are, in the place of levels.
+    pub fn of_changes(ready: &'r Ready, changes: Vec<MonthlyChange>) -> Self {
+        Self { ready, changes, wet_days: vec![WetDayChange::NONE], of_reference: 0 }
+    }
+
+    /// Lanes of the groups that have any of these levels, ascending and each with its change; and which groups they are.
+    pub fn lanes_of(&self, levels: &[(usize, MonthlyChange)]) -> Vec<(usize, Lanes)> {
+        let levels_of_each = self.changes.len() / self.wet_days.len();
+        let group = |(level, _): &(usize, MonthlyChange)| level / levels_of_each;
+        let of_groups = levels.chunk_by(|a, b| group(a) == group(b));
+        let lanes = |levels: &[(usize, MonthlyChange)]| {
+            let changes: Vec<MonthlyChange> = levels.iter().map(|(_, change)| change.clone()).collect();
+            (group(&levels[0]), self.ready.lanes(&changes))
+        };
+        of_groups.map(lanes).collect()
+    }
+
     /// Lanes of each group under the changes of all levels.
     pub fn lanes(&self, changes: &[MonthlyChange]) -> Vec<Lanes> {
         let levels_of_each = changes.len() / self.wet_days.len();

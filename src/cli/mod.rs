@@ -21,7 +21,9 @@ mod ready;
 mod runs;
 mod start;
 mod study;
+mod surface;
 mod weather;
+mod wetness;
 
 pub use failure::{Failure, status};
 

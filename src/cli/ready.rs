@@ -8,6 +8,7 @@ use crate::basin::Basin;
 use crate::defaults::DefaultInForce;
 use crate::ensemble::{BandClimate, WinterMonths, band_climates, snow_that_piles_up};
 use crate::fault::Unlikely;
+use crate::findings::NamedChange;
 use crate::fit::{Comparison, Model, Parameters, Site, compare};
 use crate::observed::Observations;
 use crate::perturb::{MonthlyChange, Recipe};
@@ -45,7 +46,10 @@ pub(super) struct Ready {
     pub fitted: Option<Fitted>,
     /// Sets of parameters that a study runs beside its own.
     pub parameter_sets: Option<ParameterSets>,
-    /// The scenario, the bands, the weather, the sites, the files of fitted parameters and of sets of them, as read.
+    /// Changes of climate that have a name: the scenario's cases, and its file's projections behind them.
+    pub named_changes: Vec<NamedChange>,
+    /// The scenario, the bands, the weather, the sites, the files of fitted parameters, of sets of them and of projections, as
+    /// read.
     pub files: Vec<InputFile>,
     /// The last part of the scenario's name without the ending.
     pub stem: Option<String>,
@@ -75,7 +79,9 @@ impl Ready {
         let of_sites = std::iter::repeat_n("observed_swe", self.observed.len());
         let fitted = self.fitted.iter().map(|_| "fitted");
         let sets = self.parameter_sets.iter().map(|_| "parameter_sets");
-        let roles = ["scenario", "bands", "weather"].into_iter().chain(of_sites).chain(fitted).chain(sets);
+        let projections = self.scenario.findings.projections_file.iter().map(|_| "projections");
+        let roles = ["scenario", "bands", "weather"].into_iter().chain(of_sites).chain(fitted);
+        let roles = roles.chain(sets).chain(projections);
         let inputs = roles.zip(&self.files).map(|(role, file)| Input {
             role,
             path: file.name.clone(),

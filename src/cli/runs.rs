@@ -1,12 +1,12 @@
 //! The runs of a study, one after another, and what they answer.
 
-use super::break_even::break_even;
 use super::failure::Failure;
 use super::generator_sheet::{generator_sheet, realizations_of_the_sheet};
 use super::level_groups::LevelGroups;
 use super::parameter_sets::{realizations_of_sets, run_sets};
 use super::progress::Progress;
 use super::ready::Ready;
+use super::surface::warmed;
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
     Findings, OtherChange, ParameterSpread, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit,
@@ -20,8 +20,8 @@ use rayon::prelude::*;
 
 /// Runs every realization under every level; the reference once more with temperatures held, and for every change of
 /// mean precipitation that stands beside the assumed one; and some realizations from each of a number of resampled
-/// records, and from each set of parameters that the scenario names, under every level; and the weather alone of realizations as long as the record, to hold it against that. The
-/// same streams throughout, so that all differences are paired.
+/// records, and from each set of parameters that the scenario names, under every level; and the weather alone of realizations as long as the record, to hold it against that. The same
+/// streams throughout, so that all differences are paired.
 pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> Result<Findings, Failure> {
     let scenario = &ready.scenario;
     let (warming, realizations) = (&scenario.warming, &scenario.realizations);
@@ -86,12 +86,13 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let generator_sheet = generator_sheet(ready, progress).map_err(halted)?;
 
     // Only a warmer level has something to be made up for.
-    let break_even = if warming.reference + 1 < warming.levels_c.len() {
-        progress.stage("looking for the precipitation that would make up for the warming");
-        Some(break_even(ready, &plan, &groups, &*made, &Quiet(progress)).map_err(halted)?)
+    let warmed = if warming.reference + 1 < warming.levels_c.len() {
+        progress.stage("running warming together with changes of precipitation");
+        Some(warmed(ready, &plan, &groups, &*made, &Quiet(progress)).map_err(halted)?)
     } else {
         None
     };
+    let (surface, break_even) = warmed.unzip();
 
     progress.stage("answering questions about them");
     let runs =
@@ -101,6 +102,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         reference: warming.reference,
         bands: &ready.basin.bands,
         mean_change_sd_pct,
+        criteria: &scenario.findings.criteria(ready.basin.area_km2()),
         seed: scenario.seed,
     };
     let findings = answer(&runs, &questions, progress).map_err(halted)?;
@@ -114,7 +116,15 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         .unwrap_or_default();
     let comparisons = ready.comparisons().map_err(open)?;
     let generator = Some(generator_sheet);
-    Ok(Findings { break_even, parameter_spread, warm_year_biases, comparisons, generator, ..findings })
+    Ok(Findings {
+        surface,
+        break_even,
+        parameter_spread,
+        warm_year_biases,
+        comparisons,
+        generator,
+        ..findings
+    })
 }
 
 /// Watches for the wish to stop alone: runs that are too many and too short to count on a bar.

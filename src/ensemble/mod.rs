@@ -3,6 +3,7 @@
 mod bench;
 mod climate;
 mod memory;
+mod nodes;
 mod plan;
 mod realization;
 mod record;
@@ -13,9 +14,10 @@ mod swe_days;
 mod watch;
 
 pub use climate::{BandClimate, WinterMonths, band_climates, snow_that_piles_up};
+pub use nodes::NodeRuns;
 pub use plan::{LevelGroup, Plan};
 pub use record::{RecordRun, RecordYear};
-pub use run::{run, run_records};
+pub use run::{run, run_nodes, run_records};
 pub use seasons::{BasinSeasons, Seasons};
 pub use survey_swe::SurveySwe;
 pub use swe_days::{COUNTED_DAYS, SweBins, SweDays};

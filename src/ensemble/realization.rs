@@ -5,8 +5,9 @@ use super::memory::Remembered;
 use super::plan::Plan;
 use super::swe_days::Tally;
 use super::watch::{Halt, Watch};
+use crate::calendar::day_of_water_year;
 use crate::perturb::Generator;
-use crate::season::{NONE, NOT_GONE, period_value};
+use crate::season::{Kind, NONE, NOT_GONE, period_value};
 
 /// What is kept of a realization's basin means: `[level][measure][year]`.
 pub(super) struct BasinKept(pub Vec<f64>);
@@ -18,6 +19,16 @@ pub(super) struct Kept {
     pub band_periods: Vec<f64>,
     /// `[level][band][measure]`: years with none, and years whose snow never went.
     pub band_undefined: Vec<[u32; 2]>,
+}
+
+/// What is kept of a realization at nodes.
+pub(super) struct NodeKept {
+    /// `[node][year]`, the first measure of the basin means.
+    pub survey_swe_mm: Vec<f64>,
+    /// `[node][measure]`: period values of the basin means.
+    pub basin: Vec<f64>,
+    /// `[node][band]`: period values of SWE on the first survey date.
+    pub band_swe_mm: Vec<f64>,
 }
 
 /// What a thread reuses from one realization to the next: a bench for each group of levels.
@@ -90,6 +101,52 @@ impl<'p> Workshop<'p> {
             Ok(self.keep_basin(|_| 0))
         };
         records.iter().map(of).collect()
+    }
+
+    /// Runs a realization and gives the period values of a plan whose levels are nodes, all in one group: of every measure of
+    /// the basin means, and of each band's SWE on the first survey date.
+    pub fn run_nodes(&mut self, number: u32, watch: &dyn Watch) -> Result<NodeKept, Halt> {
+        let plan = self.plan;
+        let (nodes, bands, measures) = (plan.levels(), plan.bands, plan.measures.list());
+        let survey = plan.measures.settings().survey_dates[0];
+        self.each_group(|group, bench, first_year| {
+            let generator = plan.groups[group].generator;
+            bench.tidy(generator.drawn(number, plan.years).is_some());
+            let lanes = bench.lanes;
+            bench.run_years((number, plan.years), generator, first_year, watch, |block, means| {
+                block.copy_means(means);
+                let mut measured = plan.measured(means);
+                let swe_mm = block.row(&block.swe_mm, day_of_water_year(block.first, survey) - 1);
+                let of_node = |node: usize| (0..bands).map(move |band| swe_mm[lanes.column(node, band)]);
+                measured.extend((0..nodes).flat_map(of_node));
+                Remembered { is_perennial: plan.keeps_snow(group, block), swe_bins: Vec::new(), measured }
+            })
+        })?;
+        let bench = &self.benches[self.of_reference];
+        let of_bands = nodes * bands;
+        let mut one = Vec::with_capacity(plan.years);
+        let mut period = |kind, place: &dyn Fn(&[f64]) -> f64| {
+            one.clear();
+            one.extend(bench.years().map(|year| place(&year.measured)));
+            period_value(kind, &mut one)
+        };
+        let mut kept = NodeKept {
+            survey_swe_mm: Vec::with_capacity(nodes * plan.years),
+            basin: Vec::with_capacity(nodes * measures.len()),
+            band_swe_mm: Vec::with_capacity(of_bands),
+        };
+        for node in 0..nodes {
+            kept.survey_swe_mm.extend(bench.years().map(|year| year.measured[node]));
+            for (at, measure) in measures.iter().enumerate() {
+                let place = |year: &[f64]| year[(year.len() - of_bands) / measures.len() * at + node];
+                kept.basin.push(period(measure.kind, &place));
+            }
+        }
+        for band in 0..of_bands {
+            let place = |year: &[f64]| year[year.len() - of_bands + band];
+            kept.band_swe_mm.push(period(Kind::AmountMm, &place));
+        }
+        Ok(kept)
     }
 
     /// Runs the reference's group first, and then the others, whose first year is run as often as its own: all levels begin

@@ -1,5 +1,6 @@
 //! The run: realizations over threads, results in the order of their numbers.
 
+use super::nodes::NodeRuns;
 use super::plan::Plan;
 use super::realization::Workshop;
 use super::seasons::{BasinSeasons, Seasons};
@@ -41,6 +42,15 @@ pub fn run_records(
         BasinSeasons::gather(plan, realizations.into_iter())
     };
     Ok((0..records.len()).map(of))
+}
+
+/// Period values of a plan whose levels are nodes of warming and precipitation, all in one group.
+///
+/// # Errors
+/// Those of [`run`].
+pub fn run_nodes(plan: &Plan<'_>, watch: &dyn Watch) -> Result<NodeRuns, Halt> {
+    let kept = each(plan, watch, |workshop, number| workshop.run_nodes(number, watch))?;
+    Ok(NodeRuns::gather(plan, &kept))
 }
 
 fn each<'p, T: Send>(

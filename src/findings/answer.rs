@@ -7,7 +7,9 @@ use super::parameter_spread::ParameterSpread;
 use super::record::RecordFindings;
 use super::record_range::{RecordRange, Refit};
 use super::resample::Resamples;
+use super::surface::ResponseSurface;
 use super::through_year::SweThroughYear;
+use super::tipping::{Criterion, TippingLevel};
 use super::warm_year_bias::WarmYearBias;
 use super::yardstick::{Assumed, Levels, yardsticks};
 use crate::basin::Band;
@@ -29,6 +31,8 @@ pub struct Questions<'a> {
     pub bands: &'a [Band],
     /// Assumed standard deviation of the change of mean precipitation, percent; 0 for none.
     pub mean_change_sd_pct: f64,
+    /// What the user wants to hold.
+    pub criteria: &'a [Criterion],
     /// Seed of the study, for the Monte Carlo error.
     pub seed: u64,
 }
@@ -71,6 +75,12 @@ pub struct Findings {
     /// How much more precipitation would make up for the warming. Found by runs of its own: whoever runs them adds it.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub break_even: Option<BreakEven>,
+    /// What any warming does together with any change of precipitation. Found by runs of its own, too.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub surface: Option<ResponseSurface>,
+    /// From which warming on something fails that the user wants to hold, one entry a criterion.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub tipping_levels: Vec<TippingLevel>,
     /// How far the answer hangs on the parameters. Found by runs of its own, too.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub parameter_spread: Option<ParameterSpread>,
@@ -135,6 +145,10 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         band: *band,
         measures: of_each_band.by_ref().take(measures_of_a_band).map(|found| found.findings).collect(),
     });
+    let headline_years = study.basin.years.index_axis(Axis(1), 0);
+    let tipping_levels = questions.criteria.iter().map(|criterion| {
+        TippingLevel::of(criterion, headline_years, (questions.levels_c, questions.reference), &resamples)
+    });
     Ok(Findings {
         levels_c: questions.levels_c.to_vec(),
         reference: questions.reference,
@@ -142,6 +156,8 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         years,
         swe_through_year: SweThroughYear::of(&study.swe_days, questions.levels_c),
         break_even: None,
+        surface: None,
+        tipping_levels: tipping_levels.collect(),
         parameter_spread: None,
         warm_year_biases: Vec::new(),
         basin,

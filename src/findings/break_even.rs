@@ -81,25 +81,31 @@ pub struct Reached {
 
 /// For each level the root nearest 0 of `excess`: the median at a change of precipitation less the reference's median.
 ///
-/// `excess` takes a change for each level, percent, and gives the excess of each; it is called some 10 times, and 30 at
-/// most. The bracket of -50 to +100 % is scanned in steps of 10 from 0 outwards, until every level has changed its sign or
-/// nothing is left; the sign change nearest 0, by straight lines between the steps, is narrowed to 0.01 %. Of two roots
-/// within one step none is found. An excess of exactly 0 is a root; a level without an excess has none.
+/// `excess` takes the levels that are still open, in their order, each with a change, percent, and gives the excess of each;
+/// it is called some 10 times, and 30 at most. The bracket of -50 to +100 % is scanned in steps of 10 from 0 outwards, until
+/// every level has changed its sign or nothing is left; the sign change nearest 0, by straight lines between the steps, is
+/// narrowed to 0.01 %. Of two roots within one step none is found. An excess of exactly 0 is a root; a level without an
+/// excess has none.
 ///
 /// # Errors
 /// Those of `excess`.
 pub fn break_even_pct<E>(
     levels: usize,
-    mut excess: impl FnMut(&[f64]) -> Result<Vec<f64>, E>,
+    mut excess: impl FnMut(&[(usize, f64)]) -> Result<Vec<f64>, E>,
 ) -> Result<Vec<Root>, E> {
     let (mut brackets, stays) = scan(levels, &mut excess)?;
-    let is_open =
-        |brackets: &[Option<Bracket>]| brackets.iter().flatten().any(|of| of.width() > PRECISION_PCT);
     let mut taken = 0;
-    while is_open(&brackets) {
-        let tried: Vec<f64> = brackets.iter().map(|of| of.map_or(0.0, |of| of.next(taken))).collect();
-        for ((bracket, pct), excess) in brackets.iter_mut().zip(&tried).zip(excess(&tried)?) {
-            *bracket = bracket.map(|of| of.narrowed(*pct, excess));
+    loop {
+        let is_open = |of: &Bracket| of.width() > PRECISION_PCT;
+        let next = |(level, of): (usize, &Option<Bracket>)| {
+            of.as_ref().filter(|of| is_open(of)).map(|of| (level, of.next(taken)))
+        };
+        let tried: Vec<(usize, f64)> = brackets.iter().enumerate().filter_map(next).collect();
+        if tried.is_empty() {
+            break;
+        }
+        for ((level, pct), excess) in tried.iter().zip(excess(&tried)?) {
+            brackets[*level] = brackets[*level].map(|of| of.narrowed(*pct, excess));
         }
         taken += 1;
     }
@@ -110,31 +116,33 @@ pub fn break_even_pct<E>(
 /// The sign change nearest 0 of each level, between two steps of the scan, and where a level without one stays.
 fn scan<E>(
     levels: usize,
-    mut excess: impl FnMut(&[f64]) -> Result<Vec<f64>, E>,
+    mut excess: impl FnMut(&[(usize, f64)]) -> Result<Vec<f64>, E>,
 ) -> Result<(Vec<Option<Bracket>>, Vec<Root>), E> {
     let [least, most] = BREAK_EVEN_BRACKET_PCT;
-    let mut scanned: Vec<(f64, Vec<f64>)> = Vec::new();
+    // Of each level, what has been looked at: changes and excesses.
+    let mut scanned: Vec<Vec<(f64, f64)>> = vec![Vec::new(); levels];
     let mut nearest = vec![None; levels];
     let mut distance = 0.0;
     while distance <= most.max(-least) && nearest.iter().any(Option::is_none) {
-        for pct in [distance, -distance] {
-            let is_new = scanned.iter().all(|(scanned, _)| *scanned != pct);
-            if is_new && (least..=most).contains(&pct) {
-                scanned.push((pct, excess(&vec![pct; levels])?));
+        let steps: &[f64] = if distance == 0.0 { &[0.0] } else { &[distance, -distance] };
+        for pct in steps.iter().copied().filter(|pct| (least..=most).contains(pct)) {
+            let open: Vec<(usize, f64)> =
+                (0..levels).filter(|level| nearest[*level].is_none()).map(|level| (level, pct)).collect();
+            for ((level, pct), excess) in open.iter().zip(excess(&open)?) {
+                scanned[*level].push((*pct, excess));
             }
         }
-        scanned.sort_by(|a, b| a.0.total_cmp(&b.0));
-        for (level, nearest) in nearest.iter_mut().enumerate() {
-            let ends = scanned.windows(2);
-            let brackets = ends.filter_map(|ends| {
-                Bracket::new([ends[0].0, ends[1].0], [ends[0].1[level], ends[1].1[level]])
-            });
+        for (of_level, nearest) in scanned.iter_mut().zip(&mut nearest).filter(|(_, found)| found.is_none()) {
+            of_level.sort_by(|a, b| a.0.total_cmp(&b.0));
+            let brackets = of_level
+                .windows(2)
+                .filter_map(|ends| Bracket::new([ends[0].0, ends[1].0], [ends[0].1, ends[1].1]));
             *nearest = brackets.min_by(|a, b| a.on_line().abs().total_cmp(&b.on_line().abs()));
         }
         distance += SCAN_PCT;
     }
-    let stays = |level: usize| {
-        let mut excess = scanned.iter().map(|(_, excess)| excess[level]);
+    let stays = |of_level: &Vec<(f64, f64)>| {
+        let mut excess = of_level.iter().map(|(_, excess)| *excess);
         if excess.clone().all(|excess| excess < 0.0 && excess.is_finite()) {
             Root::Stays(Stays::Below)
         } else if excess.all(|excess| excess > 0.0 && excess.is_finite()) {
@@ -143,7 +151,8 @@ fn scan<E>(
             Root::Unknown
         }
     };
-    Ok((nearest, (0..levels).map(stays).collect()))
+    let stays = scanned.iter().map(stays).collect();
+    Ok((nearest, stays))
 }
 
 /// Two changes between which the excess changes its sign, and the excess there.
@@ -207,8 +216,8 @@ mod tests {
     use std::convert::Infallible;
 
     fn roots(excess: impl Fn(usize, f64) -> f64, levels: usize) -> Vec<Root> {
-        let all = |pct: &[f64]| {
-            Ok::<_, Infallible>(pct.iter().enumerate().map(|(level, pct)| excess(level, *pct)).collect())
+        let all = |asked: &[(usize, f64)]| {
+            Ok::<_, Infallible>(asked.iter().map(|(level, pct)| excess(*level, *pct)).collect())
         };
         break_even_pct(levels, all).unwrap()
     }

@@ -8,8 +8,10 @@ mod chance;
 mod crossing;
 mod distribution;
 mod driest_and_wettest;
+mod elasticity;
 mod exceedance;
 mod generator_sheet;
+mod low_snow;
 mod measure;
 mod normal;
 mod odds;
@@ -22,9 +24,11 @@ mod record_range;
 mod resample;
 mod shift;
 mod spread;
+mod surface;
 mod temperature_held;
 mod three_way;
 mod through_year;
+mod tipping;
 mod variance;
 mod warm_year_bias;
 mod yardstick;
@@ -37,11 +41,13 @@ pub use chance::{Chance, Chances};
 pub use crossing::{Crossing, CrossingRange, crossing};
 pub use distribution::{DOTS, Distribution};
 pub use driest_and_wettest::{DriestAndWettest, OverRealizations};
+pub use elasticity::{HALF_STEP_C, HALF_STEP_PCT, INTERACTION_PCT, Slope, Slopes};
 pub use exceedance::{EXCEEDANCE_PCT, Exceeded};
 pub use generator_sheet::{
     GeneratorSheet, LargestDay, Period, Quantity, REALIZATIONS_OF_THE_SHEET, RealizationRange, SheetLine,
     SheetQuestions, SheetSample, SheetStatistic, Statistic, Subject, Verdict,
 };
+pub use low_snow::LOW_SNOW_BELOW_QUANTILE;
 pub use measure::{LevelFindings, MeasureFindings};
 pub use normal::{
     CLASS_LIMITS_PCT, LevelPercents, MedianSwe, NormalQuestions, PercentOfMedian, UNSTABLE_BELOW_SHARE,
@@ -58,9 +64,14 @@ pub use record_range::{
 pub use resample::{Estimate, Resamples};
 pub use shift::{Shift, percent_change};
 pub use spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
+pub use surface::{
+    Change, ChangeOrigin, CurvePoint, NamedChange, NamedNode, NodeMeasure, Nodes, Realized, ResponseSurface,
+    SurfaceNode, SurfaceQuestions,
+};
 pub use temperature_held::{HeldLevel, TemperatureHeldSpread};
 pub use three_way::{ThreeWay, ThreeWayShares};
 pub use through_year::{LevelThroughYear, SweThroughYear};
+pub use tipping::{Asks, Criterion, CriterionLevel, FailureLine, TippingLevel};
 pub use variance::{TwoWay, VarianceShares};
 pub use warm_year_bias::{BiasVerdict, WarmYearBias, warm_year_biases};
 pub use yardstick::{TIMES_ASSUMED, Yardstick, YardstickLevel};

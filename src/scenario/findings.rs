@@ -1,12 +1,47 @@
 //! `[findings]`: what a study is asked beside its headline, one table a question.
 
+mod cases;
+mod criteria;
+mod projections;
+mod surface;
+
+pub use projections::{PROJECTIONS_KEY, read_projections};
+pub use surface::SurfaceTyped;
+
 use super::section::Section;
+use crate::findings::{Criterion, NamedChange};
 
 /// What is asked, as typed.
-#[derive(Debug, Clone, Default)]
-pub struct FindingsTyped {}
+#[derive(Debug, Clone)]
+pub struct FindingsTyped {
+    /// The response surface.
+    pub surface: SurfaceTyped,
+    /// Changes of climate that have a name.
+    pub cases: Vec<NamedChange>,
+    /// The file of projections, relative to the scenario.
+    pub projections_file: Option<String>,
+    /// What is to hold, of a basin of so many km2.
+    pub criteria: Vec<criteria::CriterionTyped>,
+}
 
-pub(super) fn read(section: Section<'_>) -> Option<FindingsTyped> {
+impl FindingsTyped {
+    /// What is to hold in a basin of so many km2.
+    pub fn criteria(&self, area_km2: f64) -> Vec<Criterion> {
+        self.criteria.iter().map(|typed| typed.of(area_km2)).collect()
+    }
+}
+
+/// The file of projections, also where another key has a fault, and everything.
+pub(super) fn read(mut section: Section<'_>) -> (Option<String>, Option<FindingsTyped>) {
+    let surface = surface::read(section.section("surface"));
+    let cases = cases::read(section.sections("cases"));
+    let projections_file = projections::read(&mut section);
+    let criteria = criteria::read(section.sections("criteria"));
     section.finish();
-    Some(FindingsTyped {})
+    let typed = || {
+        let projections_file = projections_file.clone();
+        Some(FindingsTyped { surface: surface?, cases: cases?, projections_file, criteria: criteria? })
+    };
+    let typed = typed();
+    (projections_file, typed)
 }

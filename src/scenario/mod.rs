@@ -35,7 +35,7 @@ mod weather;
 pub use basin::BasinTyped;
 pub use document::Document;
 pub use draw::{Drawing, Located, draw, located, unlikely_lines};
-pub use findings::FindingsTyped;
+pub use findings::{FindingsTyped, PROJECTIONS_KEY, SurfaceTyped, read_projections};
 pub use fit::FitTyped;
 pub use fitted::{FITTED_KEY, Fitted, read_fitted};
 pub use hypsometry::HypsometryTyped;
@@ -122,6 +122,8 @@ pub struct Draft {
     pub observed: Vec<Option<ObservedTyped>>,
     /// `[fit]`.
     pub fit: Option<FitTyped>,
+    /// The file of projections, also where another key of `[findings]` has a fault.
+    pub projections_file: Option<String>,
     /// `[findings]`, a table a question.
     pub findings: Option<FindingsTyped>,
     /// Every fault of the text.
@@ -189,7 +191,7 @@ pub fn read(document: &Document<'_>) -> Draft {
         top.knows("fit");
         Some(FitTyped::default())
     };
-    let findings = findings::read(top.section("findings"));
+    let (projections_file, findings) = findings::read(top.section("findings"));
     top.finish();
     let parts = (
         hypsometry,
@@ -208,6 +210,7 @@ pub fn read(document: &Document<'_>) -> Draft {
     draft.fitted_file = fitted_file;
     draft.parameter_sets = parameter_sets;
     draft.findings = findings;
+    draft.projections_file = projections_file;
     document.keep_what_is_certain(&mut draft.faults);
     draft
 }

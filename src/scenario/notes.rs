@@ -64,6 +64,7 @@ impl Notes {
             report,
             observed,
             fit,
+            projections_file: None,
             findings: None,
             faults: self.faults.into_inner(),
             unlikely: self.unlikely.into_inner(),

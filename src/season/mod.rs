@@ -94,6 +94,13 @@ static FAMILIES: &[Family] = &[
     Family { list: melt::list, take: melt::take },
 ];
 
+/// The families of the snow that lies, and of when it lies and goes.
+static OF_SNOW_AND_TIMING: &[Family] = &[
+    Family { list: state::list, take: state::take },
+    Family { list: covered::list, take: covered::take },
+    Family { list: melt::list, take: melt::take },
+];
+
 /// The family that is taken only of snow that the air can take.
 static OF_SUBLIMATION: Family = Family { list: sublimation::list, take: sublimation::take };
 
@@ -130,6 +137,11 @@ impl Measures {
     /// The snow that lies alone, whose first measure is the headline's: for runs that are asked for nothing else.
     pub fn of_snow(settings: SeasonSettings, basin_area_km2: f64) -> Self {
         Self::of_families(&FAMILIES[..1], settings, basin_area_km2)
+    }
+
+    /// The same, and when it lies and goes.
+    pub fn of_snow_and_timing(settings: SeasonSettings, basin_area_km2: f64) -> Self {
+        Self::of_families(OF_SNOW_AND_TIMING, settings, basin_area_km2)
     }
 
     /// The same, and what the air takes of the snow.

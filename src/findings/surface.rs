@@ -1,0 +1,350 @@
+//! The response surface: what stands on the survey date under any warming together with any change of precipitation, from real
+//! runs at the nodes of a grid and at named changes beside it.
+
+use super::break_even::{Root, Stays};
+use super::elasticity::Slopes;
+use super::quantile::{quantile, sorted};
+use super::resample::{Estimate, Ranked, Resamples};
+use super::tipping::{Criterion, FailureLine};
+use crate::basin::Band;
+use crate::ensemble::NodeRuns;
+use crate::season::{Kind, MELT_OUT_DAY, Measure, Outcome};
+use ndarray::Axis;
+use serde::Serialize;
+
+/// Measures that stand on the surface beside the headline's: half of the net melt done, melt-out, days under snow.
+const BESIDE: [&str; 3] = ["melt_d50_day", MELT_OUT_DAY, "snow_covered_days"];
+
+/// A change of climate: every day warmer by so much, and all its precipitation changed by so much.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct Change {
+    /// Warming of the basin, degC, on the scale of the study's levels.
+    pub warming_c: f64,
+    /// Change of all precipitation, percent; it is the whole of the change, also where a study states one with its levels.
+    pub precipitation_change_pct: f64,
+}
+
+/// A change with a name.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct NamedChange {
+    /// Its name.
+    pub name: String,
+    /// Where it comes from.
+    pub origin: ChangeOrigin,
+    /// The change.
+    #[serde(flatten)]
+    pub change: Change,
+}
+
+/// Where a named change comes from.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
+#[serde(rename_all = "snake_case")]
+pub enum ChangeOrigin {
+    /// A case that the scenario names.
+    Case,
+    /// A line of the scenario's file of projections.
+    Projection,
+}
+
+/// What is asked of the surface.
+#[derive(Debug, Clone)]
+pub struct SurfaceQuestions<'a> {
+    /// Warmings of the grid, ascending, the reference's among them, degC.
+    pub warmings_c: Vec<f64>,
+    /// Precipitation changes of the grid, ascending, 0 among them, percent.
+    pub precipitation_changes_pct: Vec<f64>,
+    /// The study's levels, degC.
+    pub levels_c: &'a [f64],
+    /// The reference, degC.
+    pub reference_c: f64,
+    /// Changes beside the grid.
+    pub named: &'a [NamedChange],
+    /// What the user wants to hold.
+    pub criteria: &'a [Criterion],
+    /// The bands, from the lowest.
+    pub bands: &'a [Band],
+    /// Seed of the study, for the Monte Carlo error.
+    pub seed: u64,
+}
+
+/// The surface, and what is read from its nodes.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct ResponseSurface {
+    /// Realizations that were run, the study's first; no change of mean precipitation is assumed in them.
+    pub realizations: usize,
+    /// Warmings of the grid, degC.
+    pub warmings_c: Vec<f64>,
+    /// Precipitation changes of the grid, percent.
+    pub precipitation_changes_pct: Vec<f64>,
+    /// Median period value of the headline measure at the reference, mm.
+    pub reference_median_mm: f64,
+    /// What was measured, the headline's first.
+    pub measures: Vec<Measure>,
+    /// Nodes of the grid, all precipitation changes of the first warming before those of the second.
+    pub nodes: Vec<SurfaceNode>,
+    /// The changes that have a name.
+    pub named: Vec<NamedNode>,
+    /// For each warming of the grid the precipitation that brings the headline back to the reference. Found by runs of its own.
+    pub break_even: Vec<CurvePoint>,
+    /// For each criterion that can be drawn, where on the grid it begins to fail.
+    pub failure_lines: Vec<FailureLine>,
+    /// How much degrees and percents do, at every level.
+    pub slopes: Vec<Slopes>,
+    /// Realizations of the study by their own weather at the reference.
+    pub realized: Vec<Realized>,
+}
+
+/// One node.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct SurfaceNode {
+    /// What is changed there.
+    #[serde(flatten)]
+    pub change: Change,
+    /// One entry a measure of the surface.
+    pub measures: Vec<NodeMeasure>,
+}
+
+/// A named change, run.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct NamedNode {
+    /// Its name.
+    pub name: String,
+    /// Where it comes from.
+    pub origin: ChangeOrigin,
+    /// What it comes to.
+    #[serde(flatten)]
+    pub node: SurfaceNode,
+}
+
+/// A measure at a node.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct NodeMeasure {
+    /// Median of the period value over realizations.
+    pub median: Outcome,
+    /// That median less the reference's, in the unit of the measure, with the Monte Carlo error of the difference: both change
+    /// with the realizations together.
+    pub change: Option<Estimate>,
+    /// The same as a percentage of the reference's median; of amounts that are not too small for it.
+    pub change_pct: Option<Estimate>,
+}
+
+/// The break-even precipitation of a warming of the grid.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct CurvePoint {
+    /// The warming, degC.
+    pub warming_c: f64,
+    /// Precipitation change at which the headline's median is back at the reference's, percent.
+    pub precipitation_change_pct: Option<f64>,
+    /// Where there is none: on which side it stays, from -50 to +100 %.
+    pub stays: Option<Stays>,
+    /// Its 5 and 95 % quantiles over resampled realizations, percent, by straight lines between the nodes of the grid; none
+    /// where a resample's lies beyond the grid.
+    pub range_pct: Option<[f64; 2]>,
+}
+
+/// A realization's own weather: means over its period against the record's mean, of the cool season.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct Realized {
+    /// Temperature, degC above.
+    pub warmer_c: f64,
+    /// Precipitation, percent above; with the assumed change of its mean.
+    pub wetter_pct: f64,
+}
+
+/// All nodes that were run.
+#[derive(Debug, Clone)]
+pub struct Nodes {
+    changes: Vec<Change>,
+    runs: NodeRuns,
+    resamples: Resamples,
+}
+
+impl SurfaceQuestions<'_> {
+    /// Every change that has to be run, none twice; the reference is the first.
+    pub fn changes(&self) -> Vec<Change> {
+        let at =
+            |warming_c: f64, precipitation_change_pct: f64| Change { warming_c, precipitation_change_pct };
+        let grid = self
+            .warmings_c
+            .iter()
+            .flat_map(|warming_c| self.precipitation_changes_pct.iter().map(|pct| at(*warming_c, *pct)));
+        let slopes = self.levels_c.iter().flat_map(|level_c| Slopes::changes(*level_c, self.reference_c));
+        let all = std::iter::once(at(self.reference_c, 0.0))
+            .chain(grid)
+            .chain(self.named.iter().map(|named| named.change))
+            .chain(slopes);
+        let mut changes: Vec<Change> = Vec::new();
+        for change in all {
+            if !changes.contains(&change) {
+                changes.push(change);
+            }
+        }
+        changes
+    }
+
+    /// Answers from the nodes; the curve, found by runs of its own, is added to it.
+    pub fn answer(&self, nodes: &Nodes, curve: &[(f64, Root)], realized: &[Realized]) -> ResponseSurface {
+        let shown = nodes.shown();
+        let node = |change: Change| nodes.node(change, &shown);
+        let grid = |warming_c: f64| {
+            self.precipitation_changes_pct
+                .iter()
+                .map(move |pct| Change { warming_c, precipitation_change_pct: *pct })
+        };
+        let named = self.named.iter().filter_map(|named| {
+            Some(NamedNode { name: named.name.clone(), origin: named.origin, node: node(named.change)? })
+        });
+        let reference = Change { warming_c: self.reference_c, precipitation_change_pct: 0.0 };
+        ResponseSurface {
+            realizations: nodes.runs.periods.len_of(Axis(2)),
+            warmings_c: self.warmings_c.clone(),
+            precipitation_changes_pct: self.precipitation_changes_pct.clone(),
+            reference_median_mm: nodes.median(reference).unwrap_or(f64::NAN),
+            measures: shown.iter().map(|at| nodes.runs.measures[*at].clone()).collect(),
+            nodes: self.warmings_c.iter().copied().flat_map(grid).filter_map(node).collect(),
+            named: named.collect(),
+            break_even: curve.iter().map(|(warming_c, root)| self.point(nodes, *warming_c, *root)).collect(),
+            failure_lines: self.criteria.iter().filter_map(|of| FailureLine::of(of, nodes, self)).collect(),
+            slopes: self.levels_c.iter().map(|level_c| Slopes::of(nodes, *level_c, self)).collect(),
+            realized: realized.to_vec(),
+        }
+    }
+
+    fn point(&self, nodes: &Nodes, warming_c: f64, root: Root) -> CurvePoint {
+        let (precipitation_change_pct, stays) = match root {
+            Root::At(pct) => (Some(pct), None),
+            Root::Stays(stays) => (None, Some(stays)),
+            Root::Unknown => (None, None),
+        };
+        let range_pct = precipitation_change_pct.and_then(|_| self.range_pct(nodes, warming_c));
+        CurvePoint { warming_c, precipitation_change_pct, stays, range_pct }
+    }
+
+    /// The break-even of every resample by straight lines between the grid's nodes.
+    fn range_pct(&self, nodes: &Nodes, warming_c: f64) -> Option<[f64; 2]> {
+        let at = |warming_c, precipitation_change_pct| {
+            nodes.resampled_medians(Change { warming_c, precipitation_change_pct })
+        };
+        let reference = at(self.reference_c, 0.0)?;
+        let column: Option<Vec<Vec<f64>>> =
+            self.precipitation_changes_pct.iter().map(|pct| at(warming_c, *pct)).collect();
+        let column = column?;
+        let roots: Option<Vec<f64>> = (0..reference.len())
+            .map(|resample| {
+                let excess: Vec<f64> = column.iter().map(|of| of[resample] - reference[resample]).collect();
+                root_between(&self.precipitation_changes_pct, &excess)
+            })
+            .collect();
+        let roots = sorted(roots.filter(|roots| !roots.is_empty())?);
+        Some([quantile(&roots, 0.05), quantile(&roots, 0.95)])
+    }
+}
+
+/// Where values at ascending places first pass 0 upwards, by straight lines; none where they do not.
+fn root_between(places: &[f64], values: &[f64]) -> Option<f64> {
+    let ends = places.windows(2).zip(values.windows(2));
+    let mut roots = ends.filter(|(_, values)| values[0] < 0.0 && values[1] >= 0.0);
+    roots
+        .next()
+        .map(|(places, values)| places[0] + (places[1] - places[0]) * values[0] / (values[0] - values[1]))
+}
+
+impl Nodes {
+    /// What the runs came to, a node each change; `seed` is the study's.
+    pub fn new(changes: Vec<Change>, runs: NodeRuns, seed: u64) -> Self {
+        let resamples = Resamples::new(seed, runs.periods.len_of(Axis(2)));
+        Self { changes, runs, resamples }
+    }
+
+    fn at(&self, change: Change) -> Option<usize> {
+        self.changes.iter().position(|run| *run == change)
+    }
+
+    /// Median period value of the headline measure at a change, mm; none where it was not run.
+    pub fn median(&self, change: Change) -> Option<f64> {
+        let at = self.at(change)?;
+        Some(quantile(&sorted(self.period_values(at, 0)), 0.5))
+    }
+
+    fn period_values(&self, node: usize, measure: usize) -> Vec<f64> {
+        self.runs.periods.index_axis(Axis(0), node).row(measure).to_vec()
+    }
+
+    /// SWE on the survey date of each band at a change, `[band][realization]`, mm.
+    pub(super) fn of_band(&self, change: Change, band: usize) -> Option<Vec<f64>> {
+        Some(self.runs.band_swe_mm.index_axis(Axis(0), self.at(change)?).row(band).to_vec())
+    }
+
+    /// The headline's period values at a change, a realization each, mm.
+    pub(super) fn of_basin(&self, change: Change) -> Option<Vec<f64>> {
+        Some(self.period_values(self.at(change)?, 0))
+    }
+
+    /// The headline of single years of all realizations at a change, mm.
+    pub(super) fn single_years(&self, change: Change) -> Option<Vec<f64>> {
+        Some(self.runs.survey_swe_mm.index_axis(Axis(0), self.at(change)?).iter().copied().collect())
+    }
+
+    pub(super) fn resamples(&self) -> &Resamples {
+        &self.resamples
+    }
+
+    fn resampled_medians(&self, change: Change) -> Option<Vec<f64>> {
+        let ranked = Ranked::new(self.of_basin(change)?.into_iter().zip(0..));
+        let median = |weights: &[u32]| ranked.quantiles(weights, [0.5]).map_or(f64::NAN, |[median]| median);
+        Some(self.resamples.each(median))
+    }
+
+    /// Places of the measures that stand on the surface.
+    fn shown(&self) -> Vec<usize> {
+        let beside = |name: &&str| self.runs.measures.iter().position(|measure| measure.name == **name);
+        std::iter::once(0).chain(BESIDE.iter().filter_map(beside)).collect()
+    }
+
+    fn node(&self, change: Change, shown: &[usize]) -> Option<SurfaceNode> {
+        let node = self.at(change)?;
+        let measures = shown.iter().map(|at| self.measure(node, *at)).collect();
+        Some(SurfaceNode { change, measures })
+    }
+
+    fn measure(&self, node: usize, at: usize) -> NodeMeasure {
+        let kind = self.runs.measures[at].kind;
+        let [here, reference] = [node, 0].map(|node| {
+            let values = self.period_values(node, at);
+            let median = quantile(&sorted(values.iter().copied()), 0.5);
+            let ranked = Ranked::new(values.into_iter().zip(0..));
+            (median, ranked)
+        });
+        let difference =
+            |here: f64, reference: f64| Some(here - reference).filter(|change| change.is_finite());
+        let percent = |here: f64, reference: f64| percent_of(kind, here, reference);
+        let both = |of: &dyn Fn(f64, f64) -> Option<f64>| {
+            let resampled = self.resamples.each(|weights| {
+                let [[here], [reference]] =
+                    [here.1.quantiles(weights, [0.5])?, reference.1.quantiles(weights, [0.5])?];
+                of(here, reference)
+            });
+            Some(Estimate::new(of(here.0, reference.0)?, resampled))
+        };
+        NodeMeasure { median: kind.outcome(here.0), change: both(&difference), change_pct: both(&percent) }
+    }
+}
+
+/// How far one median lies above another, percent of that; none where it is too small for a percentage, or of no such kind.
+fn percent_of(kind: Kind, here: f64, reference: f64) -> Option<f64> {
+    super::shift::percent_change(kind, here - reference, reference)
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    /// Hand-computed: -10 at 0 and +30 at 20 are 0 at 5; nothing is found where they do not pass.
+    #[test]
+    fn straight_lines_pass_where_they_should() {
+        assert_eq!(root_between(&[0.0, 20.0], &[-10.0, 30.0]), Some(5.0));
+        assert_eq!(root_between(&[0.0, 20.0, 40.0], &[-10.0, -5.0, 5.0]), Some(30.0));
+        assert_eq!(root_between(&[0.0, 20.0], &[10.0, 30.0]), None);
+        assert_eq!(root_between(&[0.0, 20.0], &[f64::NAN, 30.0]), None);
+    }
+}

@@ -1,0 +1,238 @@
+//! Tipping levels: at which warming something that the user wants to hold begins to fail.
+
+use super::crossing::{Crossing, CrossingRange, range_of};
+use super::low_snow::LOW_SNOW_BELOW_QUANTILE;
+use super::quantile::{quantile, sorted};
+use super::resample::{Estimate, Ranked, Resamples};
+use super::surface::{Change, Nodes, SurfaceQuestions};
+use ndarray::ArrayView3;
+use serde::Serialize;
+
+/// Something that is to hold, over the single years of all realizations.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct Criterion {
+    /// Its name.
+    pub name: String,
+    /// What is asked.
+    #[serde(flatten)]
+    pub asks: Asks,
+}
+
+/// What a criterion asks of SWE on the survey date.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+#[serde(rename_all = "snake_case", tag = "asks")]
+pub enum Asks {
+    /// In half of the years at least so much.
+    MedianAtLeast {
+        /// SWE as the mean over the basin, mm.
+        swe_mm: f64,
+        /// Where it was stated as a volume of water over the whole basin, hm3.
+        volume_hm3: Option<f64>,
+    },
+    /// Low-snow years in at most this share: years below the quantile of the reference that makes one in five of its own
+    /// years low.
+    LowSnowYearsAtMost {
+        /// 0 to 1.
+        share: f64,
+    },
+}
+
+/// Where a criterion begins to fail.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct TippingLevel {
+    /// The criterion.
+    pub criterion: Criterion,
+    /// What it asks about, at every level.
+    pub levels: Vec<CriterionLevel>,
+    /// Whether it holds at the reference; nothing is said of where it fails if not.
+    pub holds_at_reference: bool,
+    /// The first warming at which it fails, scanning up from the reference, linear between levels.
+    pub fails: Crossing,
+    /// The Monte Carlo range of that warming: 5-95 % over resampled realizations; a resample that fails at the reference counts
+    /// as the reference.
+    pub fails_range: Option<CrossingRange>,
+}
+
+/// What a criterion asks about at a level.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct CriterionLevel {
+    /// The level, degC.
+    pub level_c: f64,
+    /// The median of single years, mm, or the share of low-snow years, with its Monte Carlo error.
+    pub value: Estimate,
+    /// Whether the criterion holds.
+    pub holds: bool,
+}
+
+/// Where on the surface's grid a criterion fails.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct FailureLine {
+    /// The criterion's name.
+    pub name: String,
+    /// By how much it holds at each node of the grid, in the order of its nodes, below 0 where it fails: mm, or share of years.
+    pub margins: Vec<f64>,
+}
+
+impl Asks {
+    /// By how much a value holds; below 0 it fails.
+    fn margin(self, value: f64) -> f64 {
+        match self {
+            Self::MedianAtLeast { swe_mm, .. } => value - swe_mm,
+            Self::LowSnowYearsAtMost { share } => share - value,
+        }
+    }
+
+    /// What is asked about, of single years; `reference` are those of the reference.
+    fn value(self, years: &[f64], reference: &[f64]) -> f64 {
+        match self {
+            Self::MedianAtLeast { .. } => quantile(&sorted(years.iter().copied()), 0.5),
+            Self::LowSnowYearsAtMost { .. } => {
+                let low_mm = quantile(&sorted(reference.iter().copied()), LOW_SNOW_BELOW_QUANTILE);
+                years.iter().filter(|swe_mm| **swe_mm < low_mm).count() as f64 / years.len() as f64
+            }
+        }
+    }
+
+    /// The same in every resample of whole realizations.
+    fn resampled(self, years: &Ranked, reference: &Ranked, resamples: &Resamples) -> Vec<Option<f64>> {
+        resamples.each(|weights| match self {
+            Self::MedianAtLeast { .. } => years.quantiles(weights, [0.5]).map(|[median]| median),
+            Self::LowSnowYearsAtMost { .. } => {
+                let [low_mm] = reference.quantiles(weights, [LOW_SNOW_BELOW_QUANTILE])?;
+                let count = |of: &mut dyn Iterator<Item = &(f64, usize)>| {
+                    of.map(|(_, realization)| f64::from(weights[*realization])).sum::<f64>()
+                };
+                let low = count(&mut years.values().iter().take_while(|(swe_mm, _)| *swe_mm < low_mm));
+                Some(low / count(&mut years.values().iter()))
+            }
+        })
+    }
+}
+
+impl TippingLevel {
+    /// Asks a criterion of single years `[level][realization][year]`, mm.
+    pub fn of(
+        criterion: &Criterion,
+        years: ArrayView3<'_, f64>,
+        (levels_c, reference): (&[f64], usize),
+        resamples: &Resamples,
+    ) -> Self {
+        let asks = criterion.asks;
+        let of_level = |level: usize| years.index_axis(ndarray::Axis(0), level);
+        let plain = |level: usize| of_level(level).iter().copied().collect::<Vec<f64>>();
+        let ranked = |level: usize| {
+            Ranked::new(of_level(level).indexed_iter().map(|((realization, _), swe)| (*swe, realization)))
+        };
+        let (reference_years, reference_ranked) = (plain(reference), ranked(reference));
+        let resampled: Vec<Vec<Option<f64>>> = (0..levels_c.len())
+            .map(|level| asks.resampled(&ranked(level), &reference_ranked, resamples))
+            .collect();
+        let levels: Vec<CriterionLevel> = (0..levels_c.len())
+            .map(|level| {
+                let value = asks.value(&plain(level), &reference_years);
+                CriterionLevel {
+                    level_c: levels_c[level],
+                    value: Estimate::new(value, resampled[level].iter().copied()),
+                    holds: asks.margin(value) >= 0.0,
+                }
+            })
+            .collect();
+        let warmer = || reference + 1..levels_c.len();
+        let first_failure = |value: &dyn Fn(usize) -> Option<f64>| {
+            let mut below = (levels_c[reference], value(reference).map(|value| asks.margin(value)));
+            for level in warmer() {
+                let (Some(before), Some(margin)) = (below.1, value(level).map(|value| asks.margin(value)))
+                else {
+                    return Crossing::Unknown;
+                };
+                if before < 0.0 {
+                    return Crossing::At { level_c: below.0, until_c: None };
+                }
+                if margin < 0.0 {
+                    let share = before / (before - margin);
+                    let level_c = below.0 + share * (levels_c[level] - below.0);
+                    return Crossing::At { level_c, until_c: None };
+                }
+                below = (levels_c[level], Some(margin));
+            }
+            match warmer().next_back() {
+                Some(highest) => Crossing::NotReached { up_to_c: levels_c[highest] },
+                None => Crossing::Unknown,
+            }
+        };
+        let fails = first_failure(&|level| Some(levels[level].value.value));
+        let of_resamples = (0..resampled[reference].len())
+            .map(|resample| first_failure(&|level| resampled[level].get(resample).copied().flatten()));
+        Self {
+            criterion: criterion.clone(),
+            holds_at_reference: levels[reference].holds,
+            fails,
+            fails_range: range_of(of_resamples),
+            levels,
+        }
+    }
+}
+
+impl FailureLine {
+    /// Asks a criterion at every node of the grid; nothing where a node is missing.
+    pub(super) fn of(criterion: &Criterion, nodes: &Nodes, questions: &SurfaceQuestions<'_>) -> Option<Self> {
+        let at = |warming_c, precipitation_change_pct| {
+            nodes.single_years(Change { warming_c, precipitation_change_pct })
+        };
+        let reference = at(questions.reference_c, 0.0)?;
+        let mut margins = Vec::new();
+        for warming_c in &questions.warmings_c {
+            for pct in &questions.precipitation_changes_pct {
+                margins.push(criterion.asks.margin(criterion.asks.value(&at(*warming_c, *pct)?, &reference)));
+            }
+        }
+        Some(Self { name: criterion.name.clone(), margins })
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use ndarray::Array3;
+
+    fn asked(asks: Asks, levels: &[[f64; 4]]) -> TippingLevel {
+        // Two realizations of two years.
+        let years = Array3::from_shape_fn((levels.len(), 2, 2), |(level, r, y)| levels[level][2 * r + y]);
+        let levels_c: Vec<f64> = (0..levels.len()).map(|level| level as f64).collect();
+        let criterion = Criterion { name: "refill".to_owned(), asks };
+        TippingLevel::of(&criterion, years.view(), (&levels_c, 0), &Resamples::new(1, 2))
+    }
+
+    const LEVELS: [[f64; 4]; 3] = [[200.0; 4], [160.0; 4], [80.0; 4]];
+
+    /// By hand: medians 200, 160, 80. 120 lies half-way from 160 to 80; all realizations are alike, so the range is that point.
+    #[test]
+    fn a_criterion_fails_where_the_line_between_levels_meets_it() {
+        let at_least = |swe_mm: f64| asked(Asks::MedianAtLeast { swe_mm, volume_hm3: None }, &LEVELS);
+        let found = at_least(120.0);
+        assert_eq!(found.fails, Crossing::At { level_c: 1.5, until_c: None });
+        assert_eq!(found.fails_range, Some(CrossingRange { q05_c: Some(1.5), q95_c: Some(1.5) }));
+        assert_eq!(found.levels.iter().map(|level| level.holds).collect::<Vec<_>>(), [true, true, false]);
+        assert_eq!(
+            at_least(80.0).fails,
+            Crossing::NotReached { up_to_c: 2.0 },
+            "as much as is asked is enough"
+        );
+        let already = at_least(201.0);
+        assert!(!already.holds_at_reference);
+        assert_eq!(already.fails, Crossing::At { level_c: 0.0, until_c: None });
+        let alone = asked(Asks::MedianAtLeast { swe_mm: 1.0, volume_hm3: None }, &LEVELS[..1]);
+        assert_eq!(alone.fails, Crossing::Unknown);
+    }
+
+    /// By hand: the reference's 20 % quantile of 10, 20, 30, 40 (type 8) stands at place 0.8 + 0.4 = 1.2, so at 12: below it
+    /// lie 1 of 4 years, then 2 of 4 and 4 of 4. At most 3 of 8 fails half-way from 1/4 to 2/4.
+    #[test]
+    fn low_snow_years_are_counted_against_the_reference() {
+        let levels = [[10.0, 20.0, 30.0, 40.0], [5.0, 11.0, 30.0, 40.0], [1.0, 2.0, 3.0, 4.0]];
+        let found = asked(Asks::LowSnowYearsAtMost { share: 0.375 }, &levels);
+        let shares: Vec<f64> = found.levels.iter().map(|level| level.value.value).collect();
+        assert_eq!(shares, [0.25, 0.5, 1.0]);
+        assert_eq!(found.fails, Crossing::At { level_c: 0.5, until_c: None });
+    }
+}
