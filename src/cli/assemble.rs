@@ -9,6 +9,7 @@ use crate::baseline::{BASELINE_YEARS_KEY, Baseline, BaselineChoice, BaselineYear
 use crate::basin::{Basin, GroundStated};
 use crate::defaults::DefaultInForce;
 use crate::fault::Fault;
+use crate::findings::NamedChange;
 use crate::observed::Observations;
 use crate::scenario::{
     Document, Draft, FITTED_KEY, Fitted, ObservedTyped, PARAMETER_SETS_KEY, PROJECTIONS_KEY, ParameterSets,

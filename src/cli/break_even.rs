@@ -63,9 +63,8 @@ impl Search<'_> {
         }
         let weather = self.groups.weather(self.made);
         let lanes = self.groups.lanes_of(&levels);
-        let of_group = |(group, lanes)| LevelGroup { lanes, generator: &weather[*group] };
         let groups: Vec<LevelGroup<'_>> =
-            lanes.iter().map(|(group, lanes)| of_group((group, lanes))).collect();
+            lanes.iter().map(|(group, lanes)| LevelGroup { lanes, generator: &weather[*group] }).collect();
         let plan = Plan { groups: &groups, reference: at, ..self.plan };
         let unchanged: Vec<&dyn Generator> = groups.iter().map(|group| group.generator).collect();
         let seasons: Vec<BasinSeasons> = run_records(&plan, &[unchanged], self.watch)?.collect();

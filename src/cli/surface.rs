@@ -6,7 +6,7 @@ use super::ready::Ready;
 use super::wetness::Wetness;
 use crate::ensemble::{Halt, LevelGroup, NodeRuns, Plan, Watch, run_nodes};
 use crate::findings::{BreakEven, Change, Nodes, ResponseSurface, Root, SurfaceQuestions};
-use crate::perturb::{Generator, Intensity, Kept, MeanChange, MonthlyChange};
+use crate::perturb::{Generator, Kept, MeanChange, MonthlyChange};
 use crate::season::Measures;
 
 /// Lanes of one run at most: some 25 kB each on every thread.

@@ -20,6 +20,7 @@ mod parameter_profiles;
 mod reading;
 mod record_precipitation;
 mod record_years;
+mod response_surface;
 mod scales;
 mod sheet;
 mod shown;
@@ -73,6 +74,8 @@ pub enum Part {
     Elevation,
     /// How much water is it?
     Volumes,
+    /// What do warming and precipitation make together?
+    Together,
     /// What is it drawn from?
     Record,
     /// Does the weather that was made look like it?
@@ -80,12 +83,13 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 8] = [
+pub const FIGURES: [Figure; 9] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
     swe_by_band::FIGURE,
     window_volume::FIGURE,
+    response_surface::FIGURE,
     record_years::FIGURE,
     record_precipitation::FIGURE,
     generator_sheet::FIGURE,

@@ -103,6 +103,13 @@ pub fn level_ink(level: usize, reference: usize, levels: usize) -> RGBColor {
     }
 }
 
+/// The ground of a change by so many steps, below 0 a loss: red deepens with loss, blue with gain, and no step is so dark
+/// that a line in ink or a dot would drown on it.
+pub fn change_ground(steps: i32) -> RGBColor {
+    let ink = if steps < 0 { WARMER[2] } else { WARMER[0] };
+    blend(PAPER, ink, (0.17 * f64::from(steps.unsigned_abs())).min(0.68))
+}
+
 /// A light ground of a level's colour, on which the colour itself still stands out.
 pub fn tint(ink: RGBColor) -> RGBColor {
     blend(PAPER, ink, TINT)

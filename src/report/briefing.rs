@@ -12,6 +12,7 @@ mod perennial;
 mod record;
 mod snow;
 mod sources;
+mod together;
 mod volumes;
 mod warm_years;
 mod yardsticks;
@@ -67,6 +68,7 @@ pub fn briefing_html(
         (perennial::paragraph(study))
         (volumes::section(study, &figures))
         (yardsticks::section(study, answer))
+        (together::section(study, answer, &figures))
         (parameters::section(study, answer))
         (warm_years::section(study))
         (record::section(study, &figures))

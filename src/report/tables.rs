@@ -4,13 +4,16 @@
 
 mod break_even;
 mod cells;
+mod criteria;
 mod driest_and_wettest;
+mod elasticities;
 mod generator_sheet;
 mod ground;
 mod measures;
 mod parameter_spread;
 mod record_range;
 mod record_years;
+mod response_surface;
 mod through_year;
 mod volumes;
 mod yardsticks;
@@ -40,6 +43,17 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     }
     if let Some(found) = &findings.break_even {
         add("break-even", break_even::break_even(found, units));
+    }
+    if let Some(surface) = &findings.surface {
+        add("response-surface", response_surface::response_surface(surface, units));
+        add("break-even-curve", response_surface::break_even_curve(surface, units));
+        add("elasticities", elasticities::elasticities(surface, &study.basin.bands, units));
+        if !surface.named.is_empty() {
+            add("named-changes", response_surface::named_changes(surface, units));
+        }
+    }
+    if !findings.tipping_levels.is_empty() {
+        add("criteria", criteria::criteria(&findings.tipping_levels, units));
     }
     add("swe-through-year", through_year::through_year(&findings.swe_through_year, study.reader));
     if let Some(sheet) = &findings.generator {

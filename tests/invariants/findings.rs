@@ -203,7 +203,7 @@ proptest! {
         let seasons = study.run_from(&generator, 2, (REALIZATIONS, YEARS), Path::Widest);
         let levels_c = &LEVELS_C[..changes.len()];
         let bands = &scenario.basin.bands;
-        let questions = Questions { levels_c, reference: 0, bands, mean_change_sd_pct: 9.0, seed: 4 };
+        let questions = Questions { levels_c, reference: 0, bands, mean_change_sd_pct: 9.0, criteria: &[], seed: 4 };
         let runs = Runs { study: &seasons, temperature_held: None, other_changes: &[], refits: &[] };
         let found: Findings = answer(&runs, &questions, &Silent).expect("findings");
         let area_km2 = bands.iter().map(|band| band.area_km2).sum();

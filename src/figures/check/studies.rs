@@ -143,6 +143,7 @@ impl Study<'_> {
             reference: self.reference,
             bands: &bands,
             mean_change_sd_pct: 0.0,
+            criteria: &[],
             seed: 7,
         };
         let runs = Runs { study: &seasons, temperature_held: None, other_changes: &[], refits: &[] };

@@ -5,11 +5,14 @@ mod chance;
 mod how_sure;
 mod parameters;
 mod place;
+mod slopes;
+mod tipping;
 mod verdict;
 mod volumes;
 mod yardstick;
 
 pub use chance::{chance_in_table, towards_shift};
+pub(super) use slopes::{per_degree, percent};
 
 use super::reader::Reader;
 use crate::findings::{Findings, LevelFindings, MeasureFindings, Spread};
@@ -40,6 +43,15 @@ pub struct Answer {
     pub volumes: Option<String>,
     /// How much more precipitation would make up for it.
     pub break_even: Vec<String>,
+    /// What one degree and one percent of precipitation do.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub slopes: Vec<String>,
+    /// What the scenario's named cases come to.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub cases: Vec<String>,
+    /// From which warming on something fails that is to hold.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub tipping: Vec<String>,
     /// Could chance hide it?
     pub chances: Vec<String>,
 }
@@ -90,6 +102,9 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
         elevation: place::elevation(findings, reader),
         volumes: volumes::volumes(findings, reader),
         break_even: break_even::break_even(findings, headline, reader),
+        slopes: slopes::slopes(findings, reader),
+        cases: slopes::cases(findings, reader),
+        tipping: tipping::tipping(findings, reader),
         chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
     };
     answer.at_a_glance = at_a_glance(findings, headline, &answer, reader);
@@ -122,7 +137,8 @@ fn at_a_glance(
             at.and_then(|at| break_even::at(findings, headline, at, reader)).into_iter().collect::<Vec<_>>(),
         ),
     ];
-    let asked = asked.into_iter().filter(|(_, answer)| !answer.is_empty());
+    let holds = ("When does what must hold begin to fail?", answer.tipping.clone());
+    let asked = asked.into_iter().chain([holds]).filter(|(_, answer)| !answer.is_empty());
     asked.map(|(question, answer)| Asked { question, answer }).collect()
 }
 

@@ -3,7 +3,7 @@
 use maud::{Markup, html};
 
 /// What was used, and who published it.
-const SOURCES: [(&str, &str); 18] = [
+const SOURCES: [(&str, &str); 19] = [
     ("Degree-days of a day's sine between minimum and maximum", "Baskerville & Emin 1969"),
     ("Rain and snow by a smooth curve, where chosen", "Dai 2008, Geophysical Research Letters 35 L12802"),
     ("Years resampled in runs (stationary bootstrap)", "Politis & Romano 1994"),
@@ -16,6 +16,10 @@ const SOURCES: [(&str, &str); 18] = [
     ("Variance from year to year given back (nesting)", "Srikanthan & Pegram 2009"),
     ("Quantiles, type 8", "Hyndman & Fan 1996, The American Statistician 50:361"),
     ("Monte Carlo error by resampling, and by the infinitesimal jackknife", "Efron & Tibshirani 1993"),
+    (
+        "Break-even precipitation (roots by ITP)",
+        "Oliveira & Takahashi 2021, ACM Transactions on Mathematical Software 47:5",
+    ),
     ("Outflow centroid", "Stewart, Cayan & Dettinger 2005"),
     ("SWE area, the storage-time integral", "Aragon & Hill 2024, Hydrology and Earth System Sciences 28:781"),
     ("Seasonal snow cover of 60 days", "Hatchett 2021, Hydrology 8:32"),

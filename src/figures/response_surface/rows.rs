@@ -1,0 +1,109 @@
+//! What stands below the surface: the named changes with their marks, the criteria with their lines.
+
+use super::super::labels::{level, signed_percent};
+use super::super::marks::{Form, Marking, marker};
+use super::super::sheet::{Drawn, HPos, Sheet, Stroke, VPos};
+use super::super::theme::{DRY, INK, LABEL, MARGIN_PX, QUIET, WIDTH_PX};
+use super::super::{Setting, labels::counted};
+use super::{case_ink, is_case};
+use crate::findings::{NamedNode, ResponseSurface};
+
+const ROW_PX: f64 = 20.0;
+const MARK_PX: f64 = 34.0;
+/// More cases than this are not named below the drawing.
+const MOST_CASES: usize = 12;
+
+/// Rows of text, each with its mark.
+pub(super) struct Rows {
+    rows: Vec<(Mark, String)>,
+}
+
+enum Mark {
+    Case(Marking),
+    Line(Stroke),
+}
+
+/// How the line of each criterion is drawn.
+pub(super) fn failure_strokes() -> impl Iterator<Item = Stroke> {
+    [[7, 4], [2, 3], [10, 3], [4, 6]].into_iter().cycle().map(|dash_px| Stroke {
+        ink: DRY,
+        width_px: 2.0,
+        dash_px: Some(dash_px),
+    })
+}
+
+/// How each named change is marked: the cases by their places, projections all alike.
+pub(super) fn markings(surface: &ResponseSurface) -> Vec<Marking> {
+    let cases = surface.named.iter().filter(|named| is_case(named.origin)).count();
+    let of = |(place, named): (usize, &NamedNode)| {
+        if is_case(named.origin) {
+            Marking { ink: case_ink(place, cases), form: Form::of_level(place + 1), is_hollow: false }
+        } else {
+            Marking { ink: QUIET, form: Form::Triangle, is_hollow: true }
+        }
+    };
+    surface.named.iter().enumerate().map(of).collect()
+}
+
+impl Rows {
+    pub fn of(surface: &ResponseSurface, setting: &Setting<'_>) -> Self {
+        let mut rows = Vec::new();
+        let mut projections = 0;
+        for (named, marking) in surface.named.iter().zip(markings(surface)) {
+            if !is_case(named.origin) {
+                projections += 1;
+            } else if rows.len() < MOST_CASES {
+                let change = named.node.change;
+                let found = named.node.measures.first().and_then(|found| found.change_pct);
+                let found = found.map_or(String::new(), |found| format!(": {}", signed_percent(found.value)));
+                let text = format!(
+                    "{} ({}, {} precipitation){found}",
+                    named.name,
+                    level(setting.units, change.warming_c),
+                    signed_percent(change.precipitation_change_pct)
+                );
+                rows.push((Mark::Case(marking), text));
+            }
+        }
+        if projections > 0 {
+            let marking = Marking { ink: QUIET, form: Form::Triangle, is_hollow: true };
+            rows.push((
+                Mark::Case(marking),
+                format!("{} of the stated file", counted(projections, "projection")),
+            ));
+        }
+        let lines = surface.failure_lines.iter().zip(failure_strokes());
+        rows.extend(lines.map(|(line, stroke)| {
+            (Mark::Line(stroke), format!("{}: holds above the line, fails below it", line.name))
+        }));
+        rows.push((
+            Mark::Line(Stroke::solid(INK, 2.4)),
+            "Break-even: as much as at the reference".to_owned(),
+        ));
+        let room = WIDTH_PX - 2.0 * MARGIN_PX - MARK_PX;
+        for (_, text) in &mut rows {
+            while LABEL.width(text) > room && text.chars().count() > 1 {
+                text.pop();
+            }
+        }
+        Self { rows }
+    }
+
+    pub fn height(&self) -> f64 {
+        self.rows.len() as f64 * ROW_PX + 12.0
+    }
+
+    pub fn write(&self, sheet: &Sheet, top: f64) -> Drawn {
+        sheet.group("rows", || {
+            for (at, (mark, text)) in self.rows.iter().enumerate() {
+                let y = top + ROW_PX * (at as f64 + 0.5);
+                match mark {
+                    Mark::Case(marking) => marker(sheet, (MARGIN_PX + 12.0, y), *marking)?,
+                    Mark::Line(stroke) => sheet.line(&[(MARGIN_PX, y), (MARGIN_PX + 24.0, y)], *stroke)?,
+                }
+                sheet.write(text, (MARGIN_PX + MARK_PX, y), LABEL, HPos::Left, VPos::Center)?;
+            }
+            Ok(())
+        })
+    }
+}

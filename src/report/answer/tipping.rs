@@ -1,0 +1,51 @@
+//! From which warming on something fails that the user wants to hold.
+
+use super::super::numbers::fixed;
+use super::super::reader::Reader;
+use super::verdict::crossing_range;
+use crate::findings::{Asks, Crossing, Findings, TippingLevel};
+
+/// A sentence a criterion.
+pub(super) fn tipping(findings: &Findings, reader: Reader) -> Vec<String> {
+    findings.tipping_levels.iter().map(|of| one(findings, of, reader)).collect()
+}
+
+fn one(findings: &Findings, of: &TippingLevel, reader: Reader) -> String {
+    let title = findings.basin.first().map_or("survey-date SWE", |headline| headline.measure.title.as_str());
+    let asked = match of.criterion.asks {
+        Asks::MedianAtLeast { volume_hm3: Some(volume_hm3), .. } => {
+            format!("{title} of at least {} over the basin in half of the years", reader.volume(volume_hm3))
+        }
+        Asks::MedianAtLeast { swe_mm, .. } => {
+            format!("{title} of at least {} in half of the years", reader.amount(swe_mm))
+        }
+        Asks::LowSnowYearsAtMost { share } => {
+            format!("low-snow years at most {} in 10", fixed(10.0 * share, usize::from(share < 0.1)))
+        }
+    };
+    let name = &of.criterion.name;
+    if !of.holds_at_reference {
+        return format!("{name} ({asked}) does not hold even at the reference.");
+    }
+    match of.fails {
+        Crossing::At { level_c, .. } => {
+            let range = crossing_range(findings, of.fails_range, reader);
+            format!(
+                "{name} ({asked}) begins to fail at about {} of warming{range}.",
+                reader.between_levels(level_c)
+            )
+        }
+        Crossing::NotReached { up_to_c } => {
+            let may_fail = of.fails_range.and_then(|range| range.q05_c).map_or(String::new(), |level_c| {
+                format!(
+                    "; with other realizations it might fail from about {} on",
+                    reader.between_levels(level_c)
+                )
+            });
+            format!("{name} ({asked}) holds up to {}{may_fail}.", reader.level(up_to_c))
+        }
+        Crossing::Unknown => {
+            format!("At which warming {name} ({asked}) fails cannot be said: no warmer level was run.")
+        }
+    }
+}
