@@ -6,6 +6,7 @@ mod days;
 mod fits;
 mod records;
 mod studies;
+mod surfaces;
 mod through_year;
 mod volumes;
 mod weathers;
@@ -175,6 +176,9 @@ fn each_figure_is_named_for_readers_who_do_not_see_it() {
             "window-volume" => {
                 &[of_years, "90, 70, 50, 30 and 10 %", "60 single years a level", "not streamflow"]
             }
+            "response-surface" => {
+                &["60 realizations", "30-year mean", "wet days come as often as in the record"]
+            }
             _ => &[of_years, "5–95 %", "at each warming level", "not day-to-day variation"],
         };
         for said in said {
@@ -206,7 +210,8 @@ fn figures_without_their_measures_are_not_drawn() {
         water_year_starts: WaterYearStart(MonthDay::new(10, 1).unwrap()),
         is_fitted: false,
     };
-    let findings = Findings { basin: Vec::new(), record: None, generator: None, ..PLAIN.findings() };
+    let findings =
+        Findings { basin: Vec::new(), surface: None, record: None, generator: None, ..PLAIN.findings() };
     assert!(FIGURES.iter().all(|figure| (figure.draw)(&findings, &setting).is_none()));
 }
 

@@ -39,6 +39,8 @@ const TICK_PX: f64 = 5.0;
 const TO_LABEL_PX: f64 = 9.0;
 /// Least space between two labels above the plot, px.
 const BETWEEN_PX: f64 = 8.0;
+/// Height of a row of labels above the plot, px.
+const ROW_ABOVE_PX: f64 = 16.0;
 
 fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let surface = findings.surface.as_ref()?;
@@ -75,7 +77,7 @@ fn paint(
     let to_the_right = limits.iter().map(|label| LABEL.width(label)).fold(0.0, f64::max);
     let left = MARGIN_PX + labels + TO_LABEL_PX + 4.0;
     let right = WIDTH_PX - MARGIN_PX - to_the_right - TO_LABEL_PX;
-    let top = MARGIN_PX + heading.height() + 62.0;
+    let top = MARGIN_PX + heading.height() + 70.0;
     let bottom = top + PLOT_PX;
     let below_axis = bottom + TO_LABEL_PX + LABEL.leading() * 2.0 + 16.0;
     let below = below_axis + rows.height();
@@ -103,7 +105,7 @@ fn paint(
             sheet.line(&[(left - TICK_PX, y), (left, y)], LINE)?;
             sheet.write(&signed(tick), (left - TO_LABEL_PX, y), LABEL, HPos::Right, VPos::Center)?;
         }
-        sheet.write(&words.upwards, (MARGIN_PX, top - 34.0), NAME, HPos::Left, VPos::Bottom)?;
+        sheet.write(&words.upwards, (MARGIN_PX, top - 42.0), NAME, HPos::Left, VPos::Bottom)?;
         let under = bottom + TO_LABEL_PX + LABEL.leading() + 4.0;
         sheet.write(&words.across, (right, under), NAME, HPos::Right, VPos::Top)
     })?;
@@ -215,12 +217,15 @@ fn limit_labels(sheet: &Sheet, plot: &Plot, field: &Field<'_>, [right, top]: [f6
         sheet.write(label, (right + TO_LABEL_PX, y), LABEL, HPos::Left, VPos::Center)?;
     }
     above.sort_by(|a, b| a.0.total_cmp(&b.0));
-    let mut free_from = f64::NEG_INFINITY;
+    // Two rows: a label too near to the one before it stands higher.
+    let mut free_from = [f64::NEG_INFINITY; 2];
     for (x, label) in above {
         let half = LABEL.width(&label) / 2.0;
-        if x - half >= free_from && x + half <= right + TO_LABEL_PX {
-            sheet.write(&label, (x, top - 6.0), LABEL, HPos::Center, VPos::Bottom)?;
-            free_from = x + half + BETWEEN_PX;
+        let row = (0..2).find(|row| x - half >= free_from[*row]);
+        if let Some(row) = row.filter(|_| x + half <= right + TO_LABEL_PX) {
+            let y = top - 6.0 - ROW_ABOVE_PX * row as f64;
+            sheet.write(&label, (x, y), LABEL, HPos::Center, VPos::Bottom)?;
+            free_from[row] = x + half + BETWEEN_PX;
         }
     }
     Ok(())

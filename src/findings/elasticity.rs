@@ -29,15 +29,16 @@ pub struct Slopes {
     pub interaction_pct: Option<Estimate>,
 }
 
-/// Slopes in one place: central differences of the median period value over 1 degC and over 10 % of precipitation, as a
-/// percentage of the median between. Their error of the method is that of the curvature over so much.
+/// Slopes in one place, over one degree and over 10 % of precipitation about the level: `100*(S(w + 0.5)/S(w - 0.5) - 1)`, and
+/// `ln(S(+5 %)/S(-5 %)) / ln(1.05/0.95)`, of medians S of the period value. The first is exact where a degree always takes the
+/// same share, the second where SWE goes with a power of precipitation.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct Slope {
-    /// The median between, mm.
+    /// The median at the level, mm.
     pub median_mm: f64,
-    /// Percent per degC of warming; none below a median of 10 mm.
+    /// Percent per degC of warming; none where the median at the level is below 10 mm.
     pub per_degree_pct: Option<Estimate>,
-    /// Percent per percent of precipitation.
+    /// Percent per percent of precipitation; likewise.
     pub per_percent_pct: Option<Estimate>,
 }
 
@@ -114,19 +115,19 @@ fn estimate<const N: usize>(
 }
 
 fn slope(changes: &[Change; 7], of: impl Fn(Change) -> Option<Vec<f64>>, resamples: &Resamples) -> Slope {
-    let between = Medians::of(of(changes[0]));
-    let median_mm = between.median;
-    let per = |ends: [Change; 2], width: f64| {
-        let [below, above] = ends.map(|change| Medians::of(of(change)));
-        let between = Medians { median: median_mm, ranked: between.ranked.clone() };
-        let slope = |[below, above, between]: [f64; 3]| {
-            (between >= LEAST_REFERENCE_MM).then(|| 100.0 * (above - below) / width / between)
-        };
-        estimate(&[below, above, between], slope, resamples)
+    let median_mm = Medians::of(of(changes[0])).median;
+    let per = |ends: [Change; 2], slope: fn(f64) -> f64| {
+        let ends = ends.map(|change| Medians::of(of(change)));
+        let ratio = |[below, above]: [f64; 2]| (below > 0.0 && above > 0.0).then(|| slope(above / below));
+        if median_mm >= LEAST_REFERENCE_MM { estimate(&ends, ratio, resamples) } else { None }
     };
+    let (less, more) = (1.0 - HALF_STEP_PCT / 100.0, 1.0 + HALF_STEP_PCT / 100.0);
+    let widest = libm::log(more / less);
+    let per_percent_pct = per([changes[3], changes[4]], libm::log);
+    let over = |found: Estimate| found.map(|value| value / widest);
     Slope {
         median_mm,
-        per_degree_pct: per([changes[1], changes[2]], 2.0 * HALF_STEP_C),
-        per_percent_pct: per([changes[3], changes[4]], 2.0 * HALF_STEP_PCT),
+        per_degree_pct: per([changes[1], changes[2]], |ratio| 100.0 * (ratio - 1.0)),
+        per_percent_pct: per_percent_pct.map(over),
     }
 }

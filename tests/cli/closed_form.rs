@@ -169,3 +169,44 @@ fn held_temperatures_that_were_all_alike() {
         assert!((free - held).abs() < 1e-9, "{free} and {held}");
     }
 }
+
+/// The same closed form by quadrature, 4 - 0.0375 + 0.0375*(1 + x/100) mm per degC and day where all precipitation is changed by
+/// x %: storage at nodes, what a degree and a percent do about the reference and +1, and what +1 and +10 % do together beyond
+/// their sum. 0.1 % of each of two values for percents of storage, as above; an elasticity is a difference over 10 %, so 0.01;
+/// the interaction is a small difference of four values, 4.39 mm, of which their common errors are a few percent.
+#[test]
+fn surface_and_elasticities_of_the_closed_form_season() {
+    let summary = study(&basin([PRECIPITATION_MM; 3]));
+    let surface = &summary["findings"]["surface"];
+    let node = |warming_c: f64, pct: f64| {
+        let nodes = surface["nodes"].as_array().unwrap();
+        let is_it = |node: &&Value| {
+            node["warming_c"].as_f64() == Some(warming_c)
+                && node["precipitation_change_pct"].as_f64() == Some(pct)
+        };
+        nodes.iter().find(is_it).unwrap()["measures"][0].clone()
+    };
+    for (warming_c, pct, swe_mm, change_pct) in
+        [(2.0, 20.0, 362.353, -5.370), (-1.0, -10.0, 382.682, -0.061), (4.0, -40.0, 120.588, -68.508)]
+    {
+        let found = node(warming_c, pct);
+        near(&[found["median"].as_f64().unwrap()], &[swe_mm], |expected| 0.0015 * expected);
+        near(&[found["change_pct"]["value"].as_f64().unwrap()], &[change_pct], |_| 0.2);
+    }
+    let slopes = surface["slopes"].as_array().unwrap();
+    let value = |at: &Value, name: &str| at[name]["value"].as_f64().unwrap();
+    for (at, degree, percent) in [(0, -11.007, 1.0770), (1, -11.963, 1.0870)] {
+        near(&[value(&slopes[at]["basin"], "per_degree_pct")], &[degree], |_| 0.2);
+        near(&[value(&slopes[at]["basin"], "per_percent_pct")], &[percent], |_| 0.01);
+    }
+    assert_eq!(slopes[0]["interaction_mm"], Value::Null, "the reference is not warmed");
+    near(&[value(&slopes[1], "interaction_mm")], &[-4.388], |_| 0.3);
+    let curve = surface["break_even"].as_array().unwrap();
+    let at = |warming_c: f64| {
+        let point = curve.iter().find(|point| point["warming_c"].as_f64() == Some(warming_c)).unwrap();
+        point["precipitation_change_pct"].as_f64().unwrap()
+    };
+    near(&[-2.0, -1.0, 0.0, 1.0, 2.0, 3.0].map(at), &[-18.162, -9.948, 0.0, 11.853, 26.191, 43.839], |_| {
+        0.25
+    });
+}

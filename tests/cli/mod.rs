@@ -24,6 +24,7 @@ mod scenario_faults;
 mod season_keys;
 mod snow_options;
 mod streams;
+mod surface;
 mod tables;
 mod units;
 mod verdict;

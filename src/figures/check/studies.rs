@@ -149,7 +149,16 @@ impl Study<'_> {
         let runs = Runs { study: &seasons, temperature_held: None, other_changes: &[], refits: &[] };
         let record = super::records::PLAIN.findings(self.levels_c, self.reference);
         let generator = Some(super::weathers::PLAIN_SHEET.clone());
-        Findings { years: 30, record: Some(record), generator, ..answer(&runs, &questions, &Silent).unwrap() }
+        let reference_c = self.levels_c[self.reference];
+        let surface =
+            super::surfaces::made(&seasons.basin.measures[0], [self.swe[0], self.swe[2]], reference_c);
+        Findings {
+            years: 30,
+            record: Some(record),
+            generator,
+            surface: Some(surface),
+            ..answer(&runs, &questions, &Silent).unwrap()
+        }
     }
 
     /// Of a part of a range.

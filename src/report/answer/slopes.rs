@@ -98,9 +98,10 @@ fn interaction(at: &Slopes, title: &str, reader: Reader) -> Option<String> {
     }
     let word = if found.value < 0.0 { "less" } else { "more" };
     Some(format!(
-        "{together} leave {} ± {} {word} than the sum of what both do alone ({} of the reference): they do not add.",
-        reader.amount(found.value.abs()),
+        "{together} leave {} ± {} {} {word} than the sum of what both do alone ({} of the reference): they do not add.",
+        reader.amount_bare(found.value.abs()),
         precision(reader.units.depth().of(error)),
+        reader.units.depth().word,
         percent(pct)
     ))
 }

@@ -57,9 +57,9 @@ fn slopes(study: &Study<'_>, surface: &ResponseSurface) -> Markup {
     let degree = reader.units.warming().word;
     html! { div.scroll { table {
         caption {
-            "Slopes of the median at each level, as percent of that median, ± Monte Carlo error: over 1 °C and over 10 % of \
-             precipitation about it. Interaction: what the level and +10 % precipitation do together less what each does \
-             alone, percent of the reference. Every band's in the table of elasticities."
+            "What one degree about each level does to the median there, and one percent of precipitation about none, ± Monte \
+             Carlo error. Interaction: what the level and +10 % precipitation do together less what each does alone, percent \
+             of the reference. Every band's in the table of elasticities."
         }
         thead { tr {
             th scope="col" { "Warming" }
