@@ -71,7 +71,8 @@ pub(super) fn warmed(
         };
         levels_are_plain.then_some(found)
     };
-    let curve = curve(ready, &plan, &questions, (&kept, &at, &found_before), watch)?;
+    let curve =
+        curve(ready, &plan, &questions, Before { kept: &kept, at: &at, found_before: &found_before }, watch)?;
     Ok((questions.answer(&nodes, &curve, wetness.realized()), break_even))
 }
 
@@ -116,16 +117,21 @@ fn run(
     Ok(Nodes::new(changes, runs, ready.scenario.seed))
 }
 
+/// What has been made and found before the curve is.
+struct Before<'a> {
+    kept: &'a dyn Generator,
+    /// The median at a node, by warming and change of precipitation.
+    at: &'a dyn Fn(f64, f64) -> Option<f64>,
+    /// The root of a warming that is one of the study's levels.
+    found_before: &'a dyn Fn(f64) -> Option<Root>,
+}
+
 /// The root of every warming of the grid.
 fn curve(
     ready: &Ready,
     plan: &Plan<'_>,
     questions: &SurfaceQuestions<'_>,
-    (kept, at, found_before): (
-        &dyn Generator,
-        &dyn Fn(f64, f64) -> Option<f64>,
-        &dyn Fn(f64) -> Option<Root>,
-    ),
+    Before { kept, at, found_before }: Before<'_>,
     watch: &dyn Watch,
 ) -> Result<Vec<(f64, Root)>, Halt> {
     let is_new = |warming_c: &f64| *warming_c == questions.reference_c || found_before(*warming_c).is_none();

@@ -147,7 +147,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
     });
     let headline_years = study.basin.years.index_axis(Axis(1), 0);
     let tipping_levels = questions.criteria.iter().map(|criterion| {
-        TippingLevel::of(criterion, headline_years, (questions.levels_c, questions.reference), &resamples)
+        TippingLevel::of(criterion, &headline_years, (questions.levels_c, questions.reference), &resamples)
     });
     Ok(Findings {
         levels_c: questions.levels_c.to_vec(),

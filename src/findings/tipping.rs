@@ -113,7 +113,7 @@ impl TippingLevel {
     /// Asks a criterion of single years `[level][realization][year]`, mm.
     pub fn of(
         criterion: &Criterion,
-        years: ArrayView3<'_, f64>,
+        years: &ArrayView3<'_, f64>,
         (levels_c, reference): (&[f64], usize),
         resamples: &Resamples,
     ) -> Self {
@@ -200,7 +200,7 @@ mod tests {
         let years = Array3::from_shape_fn((levels.len(), 2, 2), |(level, r, y)| levels[level][2 * r + y]);
         let levels_c: Vec<f64> = (0..levels.len()).map(|level| level as f64).collect();
         let criterion = Criterion { name: "refill".to_owned(), asks };
-        TippingLevel::of(&criterion, years.view(), (&levels_c, 0), &Resamples::new(1, 2))
+        TippingLevel::of(&criterion, &years.view(), (&levels_c, 0), &Resamples::new(1, 2))
     }
 
     const LEVELS: [[f64; 4]; 3] = [[200.0; 4], [160.0; 4], [80.0; 4]];

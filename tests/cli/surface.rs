@@ -30,7 +30,7 @@ fn findings(basin: &Basin, flags: &str) -> Value {
     summary["findings"].clone()
 }
 
-fn at<'a>(nodes: &'a Value, warming_c: f64, pct: f64) -> &'a Value {
+fn at(nodes: &Value, warming_c: f64, pct: f64) -> &Value {
     let is_it = |node: &&Value| {
         node["warming_c"].as_f64() == Some(warming_c)
             && node["precipitation_change_pct"].as_f64() == Some(pct)
