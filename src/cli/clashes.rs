@@ -2,7 +2,7 @@
 
 use crate::fault::Fault;
 use crate::perturb::GeneratorChoice;
-use crate::scenario::Scenario;
+use crate::scenario::{REPLAYED_YEARS_KEY, RULE_PANEL_REALIZATIONS_KEY, Scenario};
 use crate::weather::Series;
 
 /// Lanes take some 25 kB each on every thread: these, half a gigabyte.
@@ -24,6 +24,7 @@ pub(super) fn clashes(scenario: &Scenario, bands: usize, weather: &Series) -> Ve
             "take fewer classes: 10 are off by a few percent of a snowfall while it melts",
         ));
     }
+    faults.extend(of_findings(scenario, weather));
     if !scenario.snow.options.wet_bulb {
         return faults;
     }
@@ -44,4 +45,31 @@ pub(super) fn clashes(scenario: &Scenario, bands: usize, weather: &Series) -> Ve
         ));
     }
     faults
+}
+
+/// What is asked beside the headline and cannot be had.
+fn of_findings(scenario: &Scenario, weather: &Series) -> Vec<Fault> {
+    let findings = &scenario.findings;
+    let count = scenario.realizations.count;
+    let asked = findings.rule_panel.and_then(|panel| panel.realizations);
+    let too_many = asked.filter(|asked| *asked > count).map(|asked| {
+        Fault::key(
+            RULE_PANEL_REALIZATIONS_KEY,
+            asked,
+            format!("at most the study's own {count}, which the rules share"),
+            "take fewer, or raise realizations.count",
+        )
+    });
+    let is_missing = |year: &&i32| !weather.years.iter().any(|span| span.water_year == **year);
+    let named = findings.replayed_years.years.iter().flatten();
+    let missing: Vec<String> = named.filter(is_missing).map(i32::to_string).collect();
+    let missing = (!missing.is_empty()).then(|| {
+        Fault::key(
+            REPLAYED_YEARS_KEY,
+            format!("{}, not in use", missing.join(", ")),
+            "water years of the record that are in use",
+            "`thawline check` lists those that are left out",
+        )
+    });
+    too_many.into_iter().chain(missing).collect()
 }

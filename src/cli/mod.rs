@@ -18,6 +18,8 @@ mod parameter_sets;
 mod pool;
 mod progress;
 mod ready;
+mod replayed_years;
+mod rule_panel;
 mod runs;
 mod start;
 mod study;

@@ -2,6 +2,7 @@
 
 use super::failure::Failure;
 use super::ready::Ready;
+use super::replayed_years::replayed_years;
 use crate::ensemble::{RecordRun, RecordYear};
 use crate::findings::{RecordFindings, RecordQuestions};
 use crate::season::Measures;
@@ -33,5 +34,10 @@ pub(super) fn own_years(
         levels_c: &warming.levels_c,
         reference: warming.reference,
     });
+    let replayed = match &findings {
+        Some(record) => replayed_years(ready, measures, record)?,
+        None => None,
+    };
+    let findings = findings.map(|record| RecordFindings { replayed_years: replayed, ..record });
     Ok((years, findings))
 }

@@ -42,7 +42,11 @@ pub(super) fn run_sets(
     Ok(SetRuns { measures: kept.iter().map(|at| all[*at].clone()).collect(), periods, own })
 }
 
-fn run_set(of_set: &Ready, plan: &Plan<'_>, watch: &dyn Watch) -> Result<BasinSeasons, Halt> {
+/// The basin's seasons with another set's snow and weather: `plan`'s groups are made anew.
+///
+/// # Errors
+/// Those of a run.
+pub(super) fn run_set(of_set: &Ready, plan: &Plan<'_>, watch: &dyn Watch) -> Result<BasinSeasons, Halt> {
     let groups = LevelGroups::of(of_set);
     let lanes = groups.lanes(&groups.changes);
     let recipe = of_set.recipe();

@@ -6,6 +6,7 @@ use super::level_groups::LevelGroups;
 use super::parameter_sets::{realizations_of_sets, run_sets};
 use super::progress::Progress;
 use super::ready::Ready;
+use super::rule_panel::rule_panel;
 use super::surface::warmed;
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
@@ -94,6 +95,8 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     };
     let (surface, break_even) = warmed.unzip();
 
+    let rule_panel = rule_panel(ready, &plan, &study.basin, progress).map_err(halted)?;
+
     progress.stage("answering questions about them");
     let runs =
         Runs { study: &study, temperature_held: Some(&held), other_changes: &other_changes, refits: &refits };
@@ -120,6 +123,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         surface,
         break_even,
         parameter_spread,
+        rule_panel,
         warm_year_biases,
         comparisons,
         generator,

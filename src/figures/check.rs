@@ -5,6 +5,7 @@ mod comparisons;
 mod days;
 mod fits;
 mod records;
+mod rules;
 mod studies;
 mod surfaces;
 mod through_year;
@@ -210,8 +211,14 @@ fn figures_without_their_measures_are_not_drawn() {
         water_year_starts: WaterYearStart(MonthDay::new(10, 1).unwrap()),
         is_fitted: false,
     };
-    let findings =
-        Findings { basin: Vec::new(), surface: None, record: None, generator: None, ..PLAIN.findings() };
+    let findings = Findings {
+        basin: Vec::new(),
+        surface: None,
+        rule_panel: None,
+        record: None,
+        generator: None,
+        ..PLAIN.findings()
+    };
     assert!(FIGURES.iter().all(|figure| (figure.draw)(&findings, &setting).is_none()));
 }
 

@@ -21,6 +21,7 @@ mod reading;
 mod record_precipitation;
 mod record_years;
 mod response_surface;
+mod rule_panel;
 mod scales;
 mod sheet;
 mod shown;
@@ -43,6 +44,7 @@ mod colour_sight;
 
 pub use fits::{DrawnFit, FIT_FIGURES, FIT_SITE_FIGURES, FitFigure, FitPart, FitSiteFigure, of_fit};
 pub use labels::sentence;
+pub use rule_panel::rule_in_words;
 pub use text_width::text_width;
 
 use crate::calendar::WaterYearStart;
@@ -76,6 +78,8 @@ pub enum Part {
     Volumes,
     /// What do warming and precipitation make together?
     Together,
+    /// Is it the model's choice?
+    Rules,
     /// What is it drawn from?
     Record,
     /// Does the weather that was made look like it?
@@ -83,13 +87,14 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 9] = [
+pub const FIGURES: [Figure; 10] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
     swe_by_band::FIGURE,
     window_volume::FIGURE,
     response_surface::FIGURE,
+    rule_panel::FIGURE,
     record_years::FIGURE,
     record_precipitation::FIGURE,
     generator_sheet::FIGURE,

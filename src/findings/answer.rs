@@ -7,6 +7,7 @@ use super::parameter_spread::ParameterSpread;
 use super::record::RecordFindings;
 use super::record_range::{RecordRange, Refit};
 use super::resample::Resamples;
+use super::rule_panel::RulePanel;
 use super::surface::ResponseSurface;
 use super::through_year::SweThroughYear;
 use super::tipping::{Criterion, TippingLevel};
@@ -84,6 +85,9 @@ pub struct Findings {
     /// How far the answer hangs on the parameters. Found by runs of its own, too.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub parameter_spread: Option<ParameterSpread>,
+    /// The headline under other published rules. Found by runs of its own, too.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub rule_panel: Option<RulePanel>,
     /// The model's error in warm winters beside the warming's effect; where a file of fitted parameters tells of it.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub warm_year_biases: Vec<WarmYearBias>,
@@ -159,6 +163,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         surface: None,
         tipping_levels: tipping_levels.collect(),
         parameter_spread: None,
+        rule_panel: None,
         warm_year_biases: Vec::new(),
         basin,
         bands: bands.collect(),

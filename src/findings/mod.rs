@@ -21,7 +21,9 @@ mod precipitation;
 mod quantile;
 mod record;
 mod record_range;
+mod replayed_years;
 mod resample;
+mod rule_panel;
 mod shift;
 mod spread;
 mod surface;
@@ -61,7 +63,12 @@ pub use record::{OwnYear, RecordFindings, RecordQuestions};
 pub use record_range::{
     REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Range, RecordRange, RecordRangeLevel, Refit,
 };
+pub use replayed_years::{ReplayedLevel, ReplayedYear, ReplayedYears};
 pub use resample::{Estimate, Resamples};
+pub use rule_panel::{
+    Fit, LevelOfRule, LevelOverRules, MELT_OUT_TOLERANCE_DAYS, MeasureByRule, OfRule, PEAK_TOLERANCE_PCT,
+    PanelRule, Rule, RulePanel, RuleRuns, Tuned, Weight, retuned, tune,
+};
 pub use shift::{Shift, percent_change};
 pub use spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
 pub use surface::{

@@ -162,7 +162,7 @@ impl MeasureBySet {
 
 impl OverSets {
     /// None where a set has no number, or there is no set.
-    fn of(values: impl Iterator<Item = f64>) -> Option<Self> {
+    pub(super) fn of(values: impl Iterator<Item = f64>) -> Option<Self> {
         let values = sorted(values);
         let (lowest, highest) = (*values.first()?, *values.last()?);
         (lowest.is_finite() && highest.is_finite()).then_some(Self { lowest, highest })

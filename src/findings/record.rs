@@ -2,6 +2,7 @@
 
 use super::normal::{NormalQuestions, PercentOfMedian, percent_of_median};
 use super::precipitation::RecordPrecipitation;
+use super::replayed_years::ReplayedYears;
 use crate::baseline::BaselineYears;
 use crate::basin::Band;
 use crate::ensemble::RecordYear;
@@ -25,6 +26,9 @@ pub struct RecordFindings {
     pub percent_of_median: Vec<PercentOfMedian>,
     /// Cumulative precipitation.
     pub precipitation: RecordPrecipitation,
+    /// Some of the years at every level. Found by runs of their own: whoever runs them adds them.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub replayed_years: Option<ReplayedYears>,
 }
 
 /// A year in use.
@@ -85,6 +89,7 @@ impl RecordFindings {
                 surveys,
             }),
             precipitation: RecordPrecipitation::of(weather, season.water_year_starts, *surveys.first()?),
+            replayed_years: None,
         })
     }
 }

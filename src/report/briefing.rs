@@ -10,6 +10,8 @@ mod observed;
 mod parameters;
 mod perennial;
 mod record;
+mod replayed_years;
+mod rule_panel;
 mod snow;
 mod sources;
 mod together;
@@ -70,8 +72,10 @@ pub fn briefing_html(
         (yardsticks::section(study, answer))
         (together::section(study, answer, &figures))
         (parameters::section(study, answer))
+        (rule_panel::section(study, &figures))
         (warm_years::section(study))
         (record::section(study, &figures))
+        (replayed_years::section(study))
         (generator_sheet::section(study, &figures))
         (normal::section(study))
         (observed::section(study, of_sites))

@@ -13,7 +13,9 @@ mod measures;
 mod parameter_spread;
 mod record_range;
 mod record_years;
+mod replayed_years;
 mod response_surface;
+mod rule_panel;
 mod through_year;
 mod volumes;
 mod yardsticks;
@@ -41,6 +43,9 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     if let Some(spread) = &findings.parameter_spread {
         add("parameter-spread", parameter_spread::parameter_spread(spread, units));
     }
+    if let Some(panel) = &findings.rule_panel {
+        add("rule-panel", rule_panel::rule_panel(panel, units));
+    }
     if let Some(found) = &findings.break_even {
         add("break-even", break_even::break_even(found, units));
     }
@@ -60,6 +65,11 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
         add("generator-sheet", generator_sheet::generator_sheet(sheet, units));
     }
     add("record-years", record_years::record_years(study));
+    if let Some((record, found)) =
+        findings.record.as_ref().and_then(|record| Some((record, record.replayed_years.as_ref()?)))
+    {
+        add("replayed-years", replayed_years::replayed_years(found, &record.headline, units));
+    }
     tables.extend(normal_tables(study));
     tables.extend(observed_tables(&findings.comparisons, units));
     tables

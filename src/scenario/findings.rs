@@ -3,9 +3,13 @@
 mod cases;
 mod criteria;
 mod projections;
+mod replayed_years;
+mod rule_panel;
 mod surface;
 
 pub use projections::{PROJECTIONS_KEY, read_projections};
+pub use replayed_years::{ReplayedYearsTyped, YEARS_KEY as REPLAYED_YEARS_KEY};
+pub use rule_panel::{REALIZATIONS_KEY as RULE_PANEL_REALIZATIONS_KEY, RulePanelTyped};
 pub use surface::SurfaceTyped;
 
 use super::section::Section;
@@ -22,6 +26,10 @@ pub struct FindingsTyped {
     pub projections_file: Option<String>,
     /// What is to hold, of a basin of so many km2.
     pub criteria: Vec<criteria::CriterionTyped>,
+    /// The headline again under other published rules; none unless asked for.
+    pub rule_panel: Option<RulePanelTyped>,
+    /// Years of the record at every level.
+    pub replayed_years: ReplayedYearsTyped,
 }
 
 impl FindingsTyped {
@@ -37,10 +45,19 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<String>, Option<Findings
     let cases = cases::read(section.sections("cases"));
     let projections_file = projections::read(&mut section);
     let criteria = criteria::read(section.sections("criteria"));
+    let rule_panel = rule_panel::read(&mut section);
+    let replayed_years = replayed_years::read(&mut section);
     section.finish();
     let typed = || {
         let projections_file = projections_file.clone();
-        Some(FindingsTyped { surface: surface?, cases: cases?, projections_file, criteria: criteria? })
+        Some(FindingsTyped {
+            surface: surface?,
+            cases: cases?,
+            projections_file,
+            criteria: criteria?,
+            rule_panel,
+            replayed_years: replayed_years.clone(),
+        })
     };
     let typed = typed();
     (projections_file, typed)

@@ -35,7 +35,10 @@ mod weather;
 pub use basin::BasinTyped;
 pub use document::Document;
 pub use draw::{Drawing, Located, draw, located, unlikely_lines};
-pub use findings::{FindingsTyped, PROJECTIONS_KEY, SurfaceTyped, read_projections};
+pub use findings::{
+    FindingsTyped, PROJECTIONS_KEY, REPLAYED_YEARS_KEY, RULE_PANEL_REALIZATIONS_KEY, ReplayedYearsTyped,
+    RulePanelTyped, SurfaceTyped, read_projections,
+};
 pub use fit::FitTyped;
 pub use fitted::{FITTED_KEY, Fitted, read_fitted};
 pub use hypsometry::HypsometryTyped;

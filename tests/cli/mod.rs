@@ -20,6 +20,7 @@ mod normal;
 mod observed;
 mod parameter_sets;
 mod results;
+mod rule_panel;
 mod scenario_faults;
 mod season_keys;
 mod snow_options;

@@ -152,12 +152,15 @@ impl Study<'_> {
         let reference_c = self.levels_c[self.reference];
         let surface =
             super::surfaces::made(&seasons.basin.measures[0], [self.swe[0], self.swe[2]], reference_c);
+        let findings = answer(&runs, &questions, &Silent).unwrap();
+        let rule_panel = super::rules::panel(&findings, -50.0, true);
         Findings {
             years: 30,
             record: Some(record),
             generator,
             surface: Some(surface),
-            ..answer(&runs, &questions, &Silent).unwrap()
+            rule_panel,
+            ..findings
         }
     }
 

@@ -1,0 +1,245 @@
+//! The headline under other published rules: how much of the answer is the model's choice.
+//!
+//! Every rule is first tuned to the study's own snow of the record, so that none differs by a worse fit; one that cannot be is shown and
+//! left out of the ranges.
+
+mod rule;
+mod tuning;
+
+pub use rule::{Rule, retuned};
+pub use tuning::{Fit, MELT_OUT_TOLERANCE_DAYS, PEAK_TOLERANCE_PCT, Tuned, tune};
+
+use super::crossing::Crossing;
+use super::measure::{Asked, MeasureFindings};
+use super::parameter_spread::OverSets;
+use super::resample::{Estimate, Resamples};
+use super::shift::Shift;
+use super::spread::Spread;
+use super::yardstick::Levels;
+use crate::season::Measure;
+use ndarray::{Array3, Axis};
+use serde::Serialize;
+
+/// A ratio this many Monte Carlo errors from 1 or nearer tells nothing: the ends of a 90 % interval of a normal.
+const ERRORS: f64 = 1.645;
+
+/// Some realizations under every level by one rule.
+#[derive(Debug, Clone, PartialEq)]
+pub struct RuleRuns {
+    /// The rule, and what was tuned.
+    pub rule: PanelRule,
+    /// Period values of the basin, `[level][measure][realization]`, the same realizations in all.
+    pub periods: Array3<f64>,
+}
+
+/// A rule of the panel.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct PanelRule {
+    /// What it changes.
+    #[serde(flatten)]
+    pub rule: Rule,
+    /// How it was tuned.
+    #[serde(flatten)]
+    pub tuned: Tuned,
+    /// Gauge multiplier of snow in force.
+    pub gauge_multiplier_snow: f64,
+    /// Lowest and highest degree-day factor in force, mm per degC and day.
+    pub degree_day_factors: [f64; 2],
+    /// Factor of radiation in force, mm per degC and day, where there is one.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub radiation_factor: Option<f64>,
+}
+
+/// The headline and melt-out, rule by rule.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct RulePanel {
+    /// Realizations of each rule, the first of the study.
+    pub realizations: usize,
+    /// Years of the record that rules were tuned on.
+    pub years_of_record: usize,
+    /// What they were tuned to: the study's own.
+    pub target: Fit,
+    /// How near counts as tuned, percent of the peak.
+    pub peak_tolerance_pct: f64,
+    /// How near counts as tuned, days of melt-out.
+    pub melt_out_tolerance_days: f64,
+    /// How a ratio's 90 % interval is made.
+    pub interval: &'static str,
+    /// Rules beside the study's own.
+    pub alternatives: usize,
+    /// Those of them that were tuned.
+    pub alternatives_tuned: usize,
+    /// The rules, the study's own first.
+    pub rules: Vec<PanelRule>,
+    /// One entry a measure, the headline's first.
+    pub measures: Vec<MeasureByRule>,
+}
+
+/// A measure of the basin, rule by rule.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct MeasureByRule {
+    /// The measure.
+    pub measure: Measure,
+    /// In the order of the rules.
+    pub rules: Vec<OfRule>,
+    /// One entry a level but the reference: the rules that were tuned, the study's own among them.
+    pub levels: Vec<LevelOverRules>,
+}
+
+/// What a rule answers.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct OfRule {
+    /// Spread over the realizations at the reference.
+    pub precipitation_spread: Option<Spread>,
+    /// From which warming on the shift outweighs it.
+    pub outweighs: Crossing,
+    /// One entry a level but the reference.
+    pub levels: Vec<LevelOfRule>,
+}
+
+/// What a rule answers at a level.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct LevelOfRule {
+    /// The level, degC.
+    pub level_c: f64,
+    /// Paired change from the reference.
+    pub shift: Option<Shift>,
+    /// The median change as a percentage of the rule's own reference median.
+    pub percent_change: Option<f64>,
+    /// Shift over the half of the rule's own spread that it points to.
+    pub signal_to_spread: Option<Estimate>,
+    /// What the ratio says, as far as its interval tells.
+    pub weight: Weight,
+}
+
+/// Whether a shift outweighs a spread.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
+#[serde(rename_all = "snake_case")]
+pub enum Weight {
+    /// It does.
+    Outweighs,
+    /// It does not.
+    DoesNotOutweigh,
+    /// The ratio's interval holds 1, or there is no ratio.
+    CannotTell,
+}
+
+/// A level over the rules that were tuned.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct LevelOverRules {
+    /// The level, degC.
+    pub level_c: f64,
+    /// Median shifts.
+    pub shift: Option<OverSets>,
+    /// Percent changes.
+    pub percent_change: Option<OverSets>,
+    /// Ratios of signal to spread.
+    pub signal_to_spread: Option<OverSets>,
+    /// Places of the rules that say the opposite of the study's own.
+    pub against: Vec<usize>,
+    /// Places of those that cannot tell.
+    pub cannot_tell: Vec<usize>,
+}
+
+impl RulePanel {
+    /// Puts the questions to the runs, the study's own first; none without it or without another.
+    pub fn of(
+        measures: &[Measure],
+        runs: &[RuleRuns],
+        years_of_record: usize,
+        (levels_c, reference): (&[f64], usize),
+        seed: u64,
+    ) -> Option<Self> {
+        let own = runs.first().filter(|_| runs.len() > 1)?;
+        let realizations = own.periods.len_of(Axis(2));
+        let resamples = Resamples::new(seed, realizations);
+        let levels = Levels { levels_c, reference };
+        let of_measure = |(at, measure): (usize, &Measure)| {
+            let of_rule = |runs: &RuleRuns| {
+                let asked = Asked {
+                    measure,
+                    periods: runs.periods.index_axis(Axis(1), at),
+                    // Single years are not kept of rules.
+                    undefined: vec![[0, 0]; levels_c.len()],
+                    held: None,
+                    years: None,
+                };
+                OfRule::of(&asked.find(levels, &resamples).findings, reference)
+            };
+            let rules: Vec<OfRule> = runs.iter().map(of_rule).collect();
+            let is_tuned: Vec<bool> = runs.iter().map(|runs| runs.rule.tuned.is_tuned).collect();
+            let levels = (0..levels_c.len().saturating_sub(1))
+                .filter_map(|at| LevelOverRules::of(&rules, &is_tuned, at));
+            MeasureByRule { measure: measure.clone(), levels: levels.collect(), rules }
+        };
+        Some(Self {
+            realizations,
+            years_of_record,
+            target: own.rule.tuned.fit,
+            peak_tolerance_pct: PEAK_TOLERANCE_PCT,
+            melt_out_tolerance_days: MELT_OUT_TOLERANCE_DAYS,
+            interval: "1.645 Monte Carlo errors either way; the error is the standard deviation over 400 resamples of whole realizations",
+            alternatives: runs.len() - 1,
+            alternatives_tuned: runs.iter().skip(1).filter(|runs| runs.rule.tuned.is_tuned).count(),
+            rules: runs.iter().map(|runs| runs.rule).collect(),
+            measures: measures.iter().enumerate().map(of_measure).collect(),
+        })
+    }
+}
+
+impl OfRule {
+    fn of(found: &MeasureFindings, reference: usize) -> Self {
+        let others = found.levels.iter().enumerate().filter(|(at, _)| *at != reference);
+        Self {
+            precipitation_spread: found.precipitation_spread,
+            outweighs: found.outweighs,
+            levels: others
+                .map(|(_, level)| LevelOfRule {
+                    level_c: level.level_c,
+                    shift: level.shift,
+                    percent_change: level.percent_change,
+                    signal_to_spread: level.signal_to_spread,
+                    weight: Weight::of(level.signal_to_spread),
+                })
+                .collect(),
+        }
+    }
+}
+
+impl Weight {
+    fn of(ratio: Option<Estimate>) -> Self {
+        let Some(Estimate { value, monte_carlo_error: Some(error) }) = ratio else { return Self::CannotTell };
+        if value - ERRORS * error > 1.0 {
+            Self::Outweighs
+        } else if value + ERRORS * error < 1.0 {
+            Self::DoesNotOutweigh
+        } else {
+            Self::CannotTell
+        }
+    }
+}
+
+impl LevelOverRules {
+    fn of(rules: &[OfRule], is_tuned: &[bool], level: usize) -> Option<Self> {
+        let at = |rule: usize| rules[rule].levels.get(level);
+        let tuned: Vec<usize> = (0..rules.len()).filter(|rule| is_tuned[*rule]).collect();
+        let over = |number: fn(&LevelOfRule) -> Option<f64>| {
+            let numbers: Option<Vec<f64>> = tuned.iter().map(|rule| number(at(*rule)?)).collect();
+            OverSets::of(numbers?.into_iter())
+        };
+        let own = at(0)?;
+        let weight = |rule: &usize| at(*rule).map_or(Weight::CannotTell, |level| level.weight);
+        let is_against = |rule: &usize| {
+            let [own, other] = [own.weight, weight(rule)];
+            own != other && own != Weight::CannotTell && other != Weight::CannotTell
+        };
+        Some(Self {
+            level_c: own.level_c,
+            shift: over(|level| level.shift.map(|shift| shift.median.value)),
+            percent_change: over(|level| level.percent_change),
+            signal_to_spread: over(|level| level.signal_to_spread.map(|ratio| ratio.value)),
+            against: tuned.iter().copied().filter(is_against).collect(),
+            cannot_tell: tuned.iter().copied().filter(|rule| weight(rule) == Weight::CannotTell).collect(),
+        })
+    }
+}
