@@ -110,7 +110,7 @@ fn fit(ready: &Ready) -> Result<Fit, Halt> {
         years.iter().filter_map(|year| Some(year.values[at?])).collect()
     };
     let peaks = values(PEAK);
-    let median = quantile(&sorted(values(MELT_OUT_DAY).into_iter()), 0.5);
+    let median = quantile(&sorted(values(MELT_OUT_DAY)), 0.5);
     Ok(Fit {
         mean_peak_swe_mm: peaks.iter().sum::<f64>() / peaks.len() as f64,
         median_melt_out_day: Kind::DayOfWaterYear.outcome(median),

@@ -91,7 +91,7 @@ pub fn tune<E>(target: &Fit, mut run: impl FnMut([f64; 2]) -> Result<Fit, E>) ->
 
 fn is_nearer(tried: &Tuned, best: &Tuned, target: &Fit) -> bool {
     let late = |of: &Tuned| of.fit.days_late(target).map_or(f64::INFINITY, f64::abs);
-    tried.is_tuned >= best.is_tuned && (tried.is_tuned > best.is_tuned || late(tried) < late(best))
+    if tried.is_tuned == best.is_tuned { late(tried) < late(best) } else { tried.is_tuned }
 }
 
 /// The catch that brings the peak to the target with a melt factor, from a first one on.
