@@ -4,6 +4,7 @@ use super::failure::Failure;
 use super::generator_sheet::{generator_sheet, realizations_of_the_sheet};
 use super::level_groups::LevelGroups;
 use super::parameter_sets::{realizations_of_sets, run_sets};
+use super::places::places;
 use super::progress::Progress;
 use super::ready::Ready;
 use super::surface::warmed;
@@ -106,6 +107,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         seed: scenario.seed,
     };
     let findings = answer(&runs, &questions, progress).map_err(halted)?;
+    let places = places(ready, &plan, &groups.changes, &study, &findings).map_err(open)?;
     let parameter_spread = of_sets
         .and_then(|sets| ParameterSpread::of(&sets, &findings.basin, &warming.levels_c, warming.reference));
     let reference_c = warming.levels_c[warming.reference];
@@ -123,6 +125,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         warm_year_biases,
         comparisons,
         generator,
+        places,
         ..findings
     })
 }

@@ -4,6 +4,7 @@ use super::break_even::BreakEven;
 use super::generator_sheet::GeneratorSheet;
 use super::measure::{Asked, Found, MeasureFindings};
 use super::parameter_spread::ParameterSpread;
+use super::places::Places;
 use super::record::RecordFindings;
 use super::record_range::{RecordRange, Refit};
 use super::resample::Resamples;
@@ -91,6 +92,9 @@ pub struct Findings {
     pub basin: Vec<MeasureFindings>,
     /// Of each band, from the lowest.
     pub bands: Vec<BandFindings>,
+    /// Where and in which years the snow is lost. Found beside the runs: whoever has the weather adds it.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub places: Option<Places>,
     /// The model against observed snow, one entry a site. No ensemble is asked for it: whoever has it adds it.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub comparisons: Vec<Comparison>,
@@ -162,6 +166,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         warm_year_biases: Vec::new(),
         basin,
         bands: bands.collect(),
+        places: None,
         comparisons: Vec::new(),
         generator: None,
         record: None,

@@ -3,12 +3,19 @@
 //! Everything that a figure draws or a sentence says about an ensemble, and about the record's own years, stands in [`Findings`] and nowhere else.
 
 mod answer;
+mod at_risk;
+mod band_change;
 mod break_even;
+mod cells;
 mod chance;
+mod coincidence;
+mod counts;
 mod crossing;
+mod crossover;
 mod distribution;
 mod driest_and_wettest;
 mod elasticity;
+mod elevations;
 mod exceedance;
 mod generator_sheet;
 mod low_snow;
@@ -17,12 +24,16 @@ mod normal;
 mod odds;
 mod parameter_spread;
 mod perennial;
+mod places;
 mod precipitation;
 mod quantile;
 mod record;
+mod record_coincidence;
 mod record_range;
 mod resample;
 mod shift;
+mod snow_drought;
+mod snow_line;
 mod spread;
 mod surface;
 mod temperature_held;
@@ -34,14 +45,20 @@ mod warm_year_bias;
 mod yardstick;
 
 pub use answer::{BandFindings, Findings, OtherChange, Questions, Runs, answer};
+pub use at_risk::{AtRisk, AtRiskLevel};
+pub use band_change::{BandChange, BandChangeLevel, Sign};
 pub use break_even::{
     BREAK_EVEN_BRACKET_PCT, BreakEven, BreakEvenLevel, Reached, Root, Stays, break_even_pct,
 };
+pub use cells::Cells;
 pub use chance::{Chance, Chances};
+pub use coincidence::{Coincidence, CoincidenceLevel, Depends, LowSnowGivenDry, OwnMedians};
 pub use crossing::{Crossing, CrossingRange, crossing};
+pub use crossover::{BandCorrelation, Crossover, CrossoverRange, Dominates};
 pub use distribution::{DOTS, Distribution};
 pub use driest_and_wettest::{DriestAndWettest, OverRealizations};
 pub use elasticity::{HALF_STEP_C, HALF_STEP_PCT, INTERACTION_PCT, Slope, Slopes};
+pub use elevations::{Line, LineRange};
 pub use exceedance::{EXCEEDANCE_PCT, Exceeded};
 pub use generator_sheet::{
     GeneratorSheet, LargestDay, Period, Quantity, REALIZATIONS_OF_THE_SHEET, RealizationRange, SheetLine,
@@ -55,14 +72,18 @@ pub use normal::{
 };
 pub use parameter_spread::{LevelBySet, MeasureBySet, Mover, OverSets, ParameterSpread, SetRuns, Weighed};
 pub use perennial::PerennialBand;
+pub use places::{Places, PlacesQuestions};
 pub use precipitation::{RecordPrecipitation, YearPrecipitation};
 pub use quantile::{quantile, sorted};
 pub use record::{OwnYear, RecordFindings, RecordQuestions};
+pub use record_coincidence::{Counted, PeriodCoincidence, PeriodsCompared, RecordCoincidence, RecordValues};
 pub use record_range::{
     REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Range, RecordRange, RecordRangeLevel, Refit,
 };
 pub use resample::{Estimate, Resamples};
 pub use shift::{Shift, percent_change};
+pub use snow_drought::{SnowDroughtLevel, SnowDroughts};
+pub use snow_line::{SnowLine, SnowLineLevel};
 pub use spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
 pub use surface::{
     Change, ChangeOrigin, CurvePoint, NamedChange, NamedNode, NodeMeasure, Nodes, Realized, ResponseSurface,

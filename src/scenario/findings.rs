@@ -2,7 +2,9 @@
 
 mod cases;
 mod criteria;
+mod periods_compared;
 mod projections;
+mod snow_line;
 mod surface;
 
 pub use projections::{PROJECTIONS_KEY, read_projections};
@@ -22,6 +24,10 @@ pub struct FindingsTyped {
     pub projections_file: Option<String>,
     /// What is to hold, of a basin of so many km2.
     pub criteria: Vec<criteria::CriterionTyped>,
+    /// Which years of the record are held against the rest.
+    pub periods_compared: periods_compared::PeriodsComparedTyped,
+    /// Where snow begins.
+    pub snow_line: snow_line::SnowLineTyped,
 }
 
 impl FindingsTyped {
@@ -37,10 +43,19 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<String>, Option<Findings
     let cases = cases::read(section.sections("cases"));
     let projections_file = projections::read(&mut section);
     let criteria = criteria::read(section.sections("criteria"));
+    let periods_compared = periods_compared::read(section.section("periods_compared"));
+    let snow_line = snow_line::read(section.section("snow_line"));
     section.finish();
     let typed = || {
         let projections_file = projections_file.clone();
-        Some(FindingsTyped { surface: surface?, cases: cases?, projections_file, criteria: criteria? })
+        Some(FindingsTyped {
+            surface: surface?,
+            cases: cases?,
+            projections_file,
+            criteria: criteria?,
+            periods_compared,
+            snow_line,
+        })
     };
     let typed = typed();
     (projections_file, typed)

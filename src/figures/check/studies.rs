@@ -121,6 +121,9 @@ impl Study<'_> {
                 (levels, bands_count, measures_count, count),
                 |(l, b, m, r)| in_band(l, b, m, r),
             ),
+            band_headline: Array4::from_shape_fn((levels, bands_count, count, 1), |(l, b, r, _)| {
+                in_band(l, b, 0, r)
+            }),
             band_undefined: Array3::from_elem((levels, bands_count, measures_count), [0, 0]),
             swe_days: self.swe_days(),
         };
