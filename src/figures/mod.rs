@@ -8,6 +8,7 @@ mod apart;
 mod axes;
 mod backend;
 mod daily;
+mod dry_and_warm;
 mod fits;
 mod generator_sheet;
 mod headline;
@@ -27,6 +28,7 @@ mod shown;
 mod survey_error;
 mod swe_by_band;
 mod swe_by_level;
+mod swe_change_by_band;
 mod swe_pair;
 mod swe_through_year;
 mod text_width;
@@ -72,6 +74,8 @@ pub enum Part {
     Timing,
     /// Where is it lost?
     Elevation,
+    /// Which years are dry and warm?
+    Years,
     /// How much water is it?
     Volumes,
     /// What do warming and precipitation make together?
@@ -83,11 +87,13 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 9] = [
+pub const FIGURES: [Figure; 11] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
     swe_by_band::FIGURE,
+    swe_change_by_band::FIGURE,
+    dry_and_warm::FIGURE,
     window_volume::FIGURE,
     response_surface::FIGURE,
     record_years::FIGURE,

@@ -1,9 +1,11 @@
 //! Change by band, with its sign: which elevations lose, which gain, and which most.
 
 use super::answer::BandFindings;
+use super::quantile::{quantile, sorted};
 use super::record_range::Range;
 use super::resample::Estimate;
 use crate::units::cubic_hectometres;
+use ndarray::{ArrayView2, ArrayView3, Axis};
 use serde::Serialize;
 
 /// What every band does at one level.
@@ -30,7 +32,8 @@ pub struct BandChange {
     pub range_mm: Range,
     /// The median as a percentage of the reference's median; none where that is small.
     pub percent: Option<f64>,
-    /// The same range as percentages.
+    /// 5-95 % of each realization's change as a percentage of its own reference; none where one has no snow there, or the median has
+    /// no percentage.
     pub range_pct: Option<Range>,
     /// The median as a volume, hm3.
     pub median_hm3: f64,
@@ -53,15 +56,29 @@ pub enum Sign {
 }
 
 impl BandChangeLevel {
-    /// Every level but the reference.
-    pub(super) fn all(bands: &[BandFindings], levels_c: &[f64], reference: usize) -> Vec<Self> {
+    /// Every level but the reference; `swe_mm` are period values of the headline measure, `[level][band][realization]`.
+    pub(super) fn all(
+        bands: &[BandFindings],
+        swe_mm: ArrayView3<'_, f64>,
+        levels_c: &[f64],
+        reference: usize,
+    ) -> Vec<Self> {
         let others = levels_c.iter().enumerate().filter(|(level, _)| *level != reference);
-        others.map(|(level, level_c)| Self::at(bands, level, *level_c, reference)).collect()
+        others.map(|(level, level_c)| Self::at(bands, swe_mm, level, *level_c, reference)).collect()
     }
 
-    fn at(bands: &[BandFindings], level: usize, level_c: f64, reference: usize) -> Self {
-        let changes: Vec<Option<BandChange>> =
-            bands.iter().map(|band| BandChange::of(band, level, reference)).collect();
+    fn at(
+        bands: &[BandFindings],
+        swe_mm: ArrayView3<'_, f64>,
+        level: usize,
+        level_c: f64,
+        reference: usize,
+    ) -> Self {
+        let changes: Vec<Option<BandChange>> = bands
+            .iter()
+            .enumerate()
+            .map(|(at, band)| BandChange::of(band, swe_mm.index_axis(Axis(1), at), level, reference))
+            .collect();
         let loses_most = |of: fn(&BandChange) -> Option<f64>| {
             let losses =
                 changes.iter().enumerate().filter_map(|(band, change)| Some((band, of(change.as_ref()?)?)));
@@ -85,15 +102,25 @@ impl BandChangeLevel {
 }
 
 impl BandChange {
-    fn of(of_band: &BandFindings, level: usize, reference: usize) -> Option<Self> {
+    fn of(
+        of_band: &BandFindings,
+        swe_mm: ArrayView2<'_, f64>,
+        level: usize,
+        reference: usize,
+    ) -> Option<Self> {
         let headline = of_band.measures.first()?;
         let found = headline.levels.get(level)?;
         let shift = found.shift?;
-        let median_mm = headline.levels.get(reference)?.periods.q50.value();
         let volume = |mm: f64| cubic_hectometres(mm, of_band.band.area_km2);
         let range_mm = Range { q05: shift.q05, q95: shift.q95 };
-        let percent_of = median_mm.filter(|_| found.percent_change.is_some());
-        let range_pct = percent_of.map(|of| range_mm.map(|mm| 100.0 * mm / of));
+        let own_pct =
+            |(before, after): (&f64, &f64)| (*before > 0.0).then(|| 100.0 * (after - before) / before);
+        let (before, after) = (swe_mm.row(reference), swe_mm.row(level));
+        let all_pct: Option<Vec<f64>> = before.iter().zip(after.iter()).map(own_pct).collect();
+        let range_pct = all_pct.filter(|_| found.percent_change.is_some()).map(|all_pct| {
+            let all_pct = sorted(all_pct);
+            Range { q05: quantile(&all_pct, 0.05), q95: quantile(&all_pct, 0.95) }
+        });
         Some(Self {
             median_mm: shift.median,
             range_mm,
@@ -107,6 +134,15 @@ impl BandChange {
 }
 
 impl Sign {
+    /// `loses`, `gains`, `cannot tell`.
+    pub fn word(self) -> &'static str {
+        match self {
+            Self::Loses => "loses",
+            Self::Gains => "gains",
+            Self::CannotTell => "cannot tell",
+        }
+    }
+
     fn of(range: Range) -> Self {
         if range.q95 < 0.0 {
             Self::Loses

@@ -89,7 +89,7 @@ impl Places {
                 .as_ref()
                 .and_then(|of| SnowDroughts::of(of, levels_c, reference, &resamples)),
             crossover: crossover.unwrap_or_default(),
-            band_change: BandChangeLevel::all(&findings.bands, levels_c, reference),
+            band_change: BandChangeLevel::all(&findings.bands, swe_mm, levels_c, reference),
             snow_line: SnowLine::of(&grounds, questions.snow_line_swe_mm, levels_c, reference),
             at_risk: AtRisk::of(
                 bands,

@@ -9,6 +9,7 @@ mod normal;
 mod observed;
 mod parameters;
 mod perennial;
+mod places;
 mod record;
 mod snow;
 mod sources;
@@ -65,7 +66,9 @@ pub fn briefing_html(
         (snow::section(study, answer))
         (snow::timing(study, &figures))
         (elevation::section(study, &figures))
+        (places::elevations(study))
         (perennial::paragraph(study))
+        (places::years(study, &figures))
         (volumes::section(study, &figures))
         (yardsticks::section(study, answer))
         (together::section(study, answer, &figures))

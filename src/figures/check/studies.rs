@@ -4,7 +4,7 @@ use super::super::{FIGURES, Figure, Setting, Svg};
 use crate::basin::{Band, Ground};
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::ensemble::{BasinSeasons, COUNTED_DAYS, Seasons, Silent, SweBins, SweDays};
-use crate::findings::{Findings, Questions, Runs, answer};
+use crate::findings::{Findings, Places, PlacesQuestions, Questions, Runs, answer};
 use crate::season::{Kind, Measure, NONE, NOT_GONE, Place};
 use crate::units::UnitSystem;
 use ndarray::{Array3, Array4};
@@ -155,13 +155,37 @@ impl Study<'_> {
         let reference_c = self.levels_c[self.reference];
         let surface =
             super::surfaces::made(&seasons.basin.measures[0], [self.swe[0], self.swe[2]], reference_c);
-        Findings {
+        let findings = Findings {
             years: 30,
             record: Some(record),
             generator,
             surface: Some(surface),
             ..answer(&runs, &questions, &Silent).unwrap()
-        }
+        };
+        // Warmth that knows nothing of the amounts; SWE itself stands for precipitation.
+        let cool_mean_c = Array3::from_shape_fn((levels, count, 1), |(level, realization, _)| {
+            self.levels_c[level] + (realization * 7 % 11) as f64 - 5.0
+        });
+        let winter_mean_c: Vec<Vec<f64>> = self
+            .levels_c
+            .iter()
+            .map(|c| {
+                bands.iter().map(|band| c + 2.0 - 0.006 * (band.elevation_m - bands[0].elevation_m)).collect()
+            })
+            .collect();
+        let places = Places::of(
+            &PlacesQuestions {
+                study: &seasons,
+                bands: &bands,
+                seed: 7,
+                precipitation: &seasons.basin.measures[0].name,
+                cool_mean_c: Some(&cool_mean_c),
+                winter_mean_c: &winter_mean_c,
+                snow_line_swe_mm: 100.0,
+            },
+            &findings,
+        );
+        Findings { places, ..findings }
     }
 
     /// Of a part of a range.

@@ -11,6 +11,7 @@ mod verdict;
 mod volumes;
 mod yardstick;
 
+pub(in super::super) use chance::chance as chance_in_words;
 pub use chance::{chance_in_table, towards_shift};
 pub(super) use slopes::{per_degree, percent};
 
