@@ -107,9 +107,7 @@ fn paint(
     for (cell, head) in HEADS.iter().enumerate() {
         let start = left + column * cell as f64;
         sheet.write(head, (start, heads), NAME, HPos::Left, VPos::Bottom)?;
-        let dashed = Stroke { ink: EDGE, width_px: 1.0, dash_px: Some([3, 3]) };
         sheet.line(&[(start, heads + 8.0), (start, bottom)], Stroke::solid(EDGE, 1.0))?;
-        sheet.line(&[(start + QUARTER * full, heads + 8.0), (start + QUARTER * full, bottom)], dashed)?;
     }
     for (row, at) in levels.iter().enumerate() {
         let Some(level) = found.levels.get(*at) else { continue };
@@ -125,11 +123,13 @@ fn paint(
             let error = 2.0 * chance.estimate.monte_carlo_error.unwrap_or(0.0);
             let across = |share: f64| start + full * share.clamp(0.0, 1.0);
             sheet.block((start, top), (across(share), top + BAR_PX), ink)?;
+            let dashed = Stroke { ink: EDGE, width_px: 1.0, dash_px: Some([3, 3]) };
+            sheet.line(&[(across(QUARTER), top - 3.0), (across(QUARTER), top + BAR_PX)], dashed)?;
             sheet.line(
                 &[(across(share - error), top + BAR_PX + 3.0), (across(share + error), top + BAR_PX + 3.0)],
                 Stroke::solid(EDGE, 2.0),
             )?;
-            let number = (across(share + error) + 6.0, middle);
+            let number = (across(QUARTER.max(share + error)) + 6.0, middle);
             sheet.write(&format!("{} in 10", in_ten(share)), number, LABEL, HPos::Left, VPos::Center)?;
             let given = match cell {
                 0 => level.low_snow_given_dry.warm,

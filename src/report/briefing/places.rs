@@ -1,6 +1,6 @@
 //! Dry and warm years, kinds of snow drought, and where snow lies, is at risk and is decided: one answer sentence each.
 
-use super::super::answer::chance_in_words as chance;
+use super::super::answer::{chance_in_table, chance_in_words as chance};
 use super::super::numbers::{fixed, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
@@ -52,7 +52,7 @@ fn in_ten(share: f64) -> String {
 }
 
 fn said(found: Chance) -> String {
-    format!("{} ({})", in_ten(found.estimate.value), chance(found))
+    format!("{} ({})", in_ten(found.estimate.value), chance_in_table(found))
 }
 
 fn dry_and_warm(found: &Coincidence, findings: &Findings, reader: Reader) -> String {
@@ -218,7 +218,7 @@ fn snow_line(found: &SnowLine, findings: &Findings, reader: Reader) -> String {
         return String::new();
     };
     let rise = |m_per_c: Option<f64>| {
-        m_per_c.map_or(String::new(), |rise| format!(", {} higher", reader.elevation_per_degree(rise)))
+        m_per_c.map_or(String::new(), |rise| format!(", higher by {}", reader.elevation_per_degree(rise)))
     };
     if then.level_c == now.level_c {
         return format!(
@@ -252,10 +252,12 @@ fn at_risk(found: &AtRiskLevel, reader: Reader) -> String {
         .volume_share
         .map_or(String::new(), |share| format!(", {} % of the basin's", fixed(100.0 * share, 0)));
     format!(
-        "At risk by {}: bands whose winter mean is at or below freezing now and above it then. They hold {} % of the area and {} of snow water{share}.",
+        "At risk by {}: bands whose winter mean is at or below freezing now and above it then. They hold {} % of the area and {} of snow water{share} (5–95 %: {} to {}).",
         reader.level(found.level_c),
         fixed(100.0 * found.area_share, 0),
-        reader.volume(found.volume_hm3)
+        reader.volume(found.volume_hm3),
+        reader.volume_bare(found.volume_range_hm3.q05),
+        reader.volume_bare(found.volume_range_hm3.q95)
     )
 }
 
