@@ -15,8 +15,8 @@ mod swe_days;
 mod watch;
 
 pub use climate::{BandClimate, WinterMonths, band_climates, snow_that_piles_up};
-pub use nodes::NodeRuns;
 pub use cool_season::cool_season_mean_c;
+pub use nodes::NodeRuns;
 pub use plan::{LevelGroup, Plan};
 pub use record::{RecordRun, RecordYear};
 pub use run::{run, run_nodes, run_records};
