@@ -7,11 +7,13 @@ mod against;
 mod apart;
 mod axes;
 mod backend;
+mod change_against_spread;
 mod daily;
 mod fits;
 mod generator_sheet;
 mod headline;
 mod labels;
+mod low_snow_odds;
 mod marks;
 mod melt_timing;
 mod observed_swe;
@@ -33,6 +35,7 @@ mod text_width;
 pub mod theme;
 mod thin;
 mod value_ticks;
+mod variance_by_period;
 mod window_volume;
 mod winters_not_seen;
 
@@ -76,6 +79,8 @@ pub enum Part {
     Volumes,
     /// What do warming and precipitation make together?
     Together,
+    /// What do single years say of it?
+    Years,
     /// What is it drawn from?
     Record,
     /// Does the weather that was made look like it?
@@ -83,13 +88,16 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 9] = [
+pub const FIGURES: [Figure; 12] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
     swe_by_band::FIGURE,
     window_volume::FIGURE,
     response_surface::FIGURE,
+    low_snow_odds::FIGURE,
+    variance_by_period::FIGURE,
+    change_against_spread::FIGURE,
     record_years::FIGURE,
     record_precipitation::FIGURE,
     generator_sheet::FIGURE,

@@ -4,41 +4,50 @@
 
 mod answer;
 mod break_even;
+mod by_year;
 mod chance;
 mod crossing;
+mod detection;
 mod distribution;
 mod driest_and_wettest;
 mod elasticity;
 mod exceedance;
 mod generator_sheet;
+mod low_runs;
 mod low_snow;
 mod measure;
 mod normal;
 mod odds;
 mod parameter_spread;
+mod partition;
 mod perennial;
 mod precipitation;
 mod quantile;
+mod ranged;
 mod record;
 mod record_range;
 mod resample;
 mod shift;
 mod spread;
 mod surface;
+mod tails;
 mod temperature_held;
 mod three_way;
 mod through_year;
 mod tipping;
 mod variance;
 mod warm_year_bias;
+mod worst_years;
 mod yardstick;
 
 pub use answer::{BandFindings, Findings, OtherChange, Questions, Runs, answer};
 pub use break_even::{
     BREAK_EVEN_BRACKET_PCT, BreakEven, BreakEvenLevel, Reached, Root, Stays, break_even_pct,
 };
+pub use by_year::{ByYear, ByYearQuestions, MeasureByYear};
 pub use chance::{Chance, Chances};
 pub use crossing::{Crossing, CrossingRange, crossing};
+pub use detection::{Detection, DetectionLevel, DetectionPeriod, WarmingRate};
 pub use distribution::{DOTS, Distribution};
 pub use driest_and_wettest::{DriestAndWettest, OverRealizations};
 pub use elasticity::{HALF_STEP_C, HALF_STEP_PCT, INTERACTION_PCT, Slope, Slopes};
@@ -47,16 +56,21 @@ pub use generator_sheet::{
     GeneratorSheet, LargestDay, Period, Quantity, REALIZATIONS_OF_THE_SHEET, RealizationRange, SheetLine,
     SheetQuestions, SheetSample, SheetStatistic, Statistic, Subject, Verdict,
 };
-pub use low_snow::LOW_SNOW_BELOW_QUANTILE;
+pub use low_runs::{LowRuns, RUNS_AT_OR_BELOW_QUANTILE, RunChance, RunLength};
+pub use low_snow::{
+    LOW_SNOW_BELOW_QUANTILE, LowSnow, LowSnowLevel, RecordLowSnow, RecordLowSnowLevel, WithoutWarming,
+};
 pub use measure::{LevelFindings, MeasureFindings};
 pub use normal::{
     CLASS_LIMITS_PCT, LevelPercents, MedianSwe, NormalQuestions, PercentOfMedian, UNSTABLE_BELOW_SHARE,
     percent_of_median,
 };
 pub use parameter_spread::{LevelBySet, MeasureBySet, Mover, OverSets, ParameterSpread, SetRuns, Weighed};
+pub use partition::{AVERAGED_YEARS, HoldsMost, Partition, PartitionedPeriod};
 pub use perennial::PerennialBand;
 pub use precipitation::{RecordPrecipitation, YearPrecipitation};
 pub use quantile::{quantile, sorted};
+pub use ranged::Ranged;
 pub use record::{OwnYear, RecordFindings, RecordQuestions};
 pub use record_range::{
     REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Range, RecordRange, RecordRangeLevel, Refit,
@@ -68,10 +82,12 @@ pub use surface::{
     Change, ChangeOrigin, CurvePoint, NamedChange, NamedNode, NodeMeasure, Nodes, Realized, ResponseSurface,
     SurfaceNode, SurfaceQuestions,
 };
+pub use tails::{TailChanges, Tails};
 pub use temperature_held::{HeldLevel, TemperatureHeldSpread};
 pub use three_way::{ThreeWay, ThreeWayShares};
 pub use through_year::{LevelThroughYear, SweThroughYear};
 pub use tipping::{Asks, Criterion, CriterionLevel, FailureLine, TippingLevel};
 pub use variance::{TwoWay, VarianceShares};
 pub use warm_year_bias::{BiasVerdict, WarmYearBias, warm_year_biases};
+pub use worst_years::{ReturnOfYear, WorstYear};
 pub use yardstick::{TIMES_ASSUMED, Yardstick, YardstickLevel};

@@ -2,14 +2,16 @@
 
 mod cases;
 mod criteria;
+mod low_snow;
 mod projections;
 mod surface;
+mod warming_rate;
 
 pub use projections::{PROJECTIONS_KEY, read_projections};
 pub use surface::SurfaceTyped;
 
 use super::section::Section;
-use crate::findings::{Criterion, NamedChange};
+use crate::findings::{Criterion, NamedChange, WarmingRate};
 
 /// What is asked, as typed.
 #[derive(Debug, Clone)]
@@ -22,6 +24,10 @@ pub struct FindingsTyped {
     pub projections_file: Option<String>,
     /// What is to hold, of a basin of so many km2.
     pub criteria: Vec<criteria::CriterionTyped>,
+    /// What a low-snow year is.
+    pub low_snow: low_snow::LowSnowTyped,
+    /// The user's rate of warming, if one is stated.
+    pub warming_rate: Option<WarmingRate>,
 }
 
 impl FindingsTyped {
@@ -37,10 +43,24 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<String>, Option<Findings
     let cases = cases::read(section.sections("cases"));
     let projections_file = projections::read(&mut section);
     let criteria = criteria::read(section.sections("criteria"));
+    let low_snow = low_snow::read(section.section("low_snow"));
+    let states_rate = section.has("warming_rate");
+    let warming_rate = warming_rate::read(section.section("warming_rate"));
     section.finish();
     let typed = || {
         let projections_file = projections_file.clone();
-        Some(FindingsTyped { surface: surface?, cases: cases?, projections_file, criteria: criteria? })
+        // A rate that was typed with a fault is none to run with.
+        if states_rate && warming_rate.is_none() {
+            return None;
+        }
+        Some(FindingsTyped {
+            surface: surface?,
+            cases: cases?,
+            projections_file,
+            criteria: criteria?,
+            low_snow,
+            warming_rate,
+        })
     };
     let typed = typed();
     (projections_file, typed)
