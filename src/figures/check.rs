@@ -1,6 +1,7 @@
 //! Tests of whole figures: text inside and apart, numbers that are numbers, titles that turn with the findings.
 
 mod bands;
+mod by_year;
 mod comparisons;
 mod days;
 mod fits;
@@ -211,8 +212,14 @@ fn figures_without_their_measures_are_not_drawn() {
         water_year_starts: WaterYearStart(MonthDay::new(10, 1).unwrap()),
         is_fitted: false,
     };
-    let findings =
-        Findings { basin: Vec::new(), surface: None, record: None, generator: None, ..PLAIN.findings() };
+    let findings = Findings {
+        basin: Vec::new(),
+        surface: None,
+        by_year: None,
+        record: None,
+        generator: None,
+        ..PLAIN.findings()
+    };
     assert!(FIGURES.iter().all(|figure| (figure.draw)(&findings, &setting).is_none()));
 }
 

@@ -13,7 +13,7 @@ use crate::units::UnitSystem;
 pub(super) const FIGURE: Figure = Figure {
     slug: "dry-and-warm",
     question: "How often are dry years warm as well, and what does that do to the snow?",
-    part: Part::Years,
+    part: Part::DryAndWarm,
     draw,
 };
 

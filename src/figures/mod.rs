@@ -7,12 +7,14 @@ mod against;
 mod apart;
 mod axes;
 mod backend;
+mod change_against_spread;
 mod daily;
 mod dry_and_warm;
 mod fits;
 mod generator_sheet;
 mod headline;
 mod labels;
+mod low_snow_odds;
 mod marks;
 mod melt_timing;
 mod observed_swe;
@@ -35,6 +37,7 @@ mod text_width;
 pub mod theme;
 mod thin;
 mod value_ticks;
+mod variance_by_period;
 mod window_volume;
 mod winters_not_seen;
 
@@ -75,11 +78,13 @@ pub enum Part {
     /// Where is it lost?
     Elevation,
     /// Which years are dry and warm?
-    Years,
+    DryAndWarm,
     /// How much water is it?
     Volumes,
     /// What do warming and precipitation make together?
     Together,
+    /// What do single years say of it?
+    Years,
     /// What is it drawn from?
     Record,
     /// Does the weather that was made look like it?
@@ -87,7 +92,7 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 11] = [
+pub const FIGURES: [Figure; 14] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
@@ -96,6 +101,9 @@ pub const FIGURES: [Figure; 11] = [
     dry_and_warm::FIGURE,
     window_volume::FIGURE,
     response_surface::FIGURE,
+    low_snow_odds::FIGURE,
+    variance_by_period::FIGURE,
+    change_against_spread::FIGURE,
     record_years::FIGURE,
     record_precipitation::FIGURE,
     generator_sheet::FIGURE,

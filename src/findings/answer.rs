@@ -1,6 +1,7 @@
 //! Puts every question to a study's runs, measure by measure, for the basin and for each band.
 
 use super::break_even::BreakEven;
+use super::by_year::ByYear;
 use super::generator_sheet::GeneratorSheet;
 use super::measure::{Asked, Found, MeasureFindings};
 use super::parameter_spread::ParameterSpread;
@@ -88,6 +89,10 @@ pub struct Findings {
     /// The model's error in warm winters beside the warming's effect; where a file of fitted parameters tells of it.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub warm_year_biases: Vec<WarmYearBias>,
+    /// What single years say: variance by averaging period, low-snow odds, worst years, runs, tails, detection. Whoever has the
+    /// record's own years asks it.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub by_year: Option<ByYear>,
     /// Of the basin mean, one entry a measure, the headline's first.
     pub basin: Vec<MeasureFindings>,
     /// Of each band, from the lowest.
@@ -164,6 +169,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         tipping_levels: tipping_levels.collect(),
         parameter_spread: None,
         warm_year_biases: Vec::new(),
+        by_year: None,
         basin,
         bands: bands.collect(),
         places: None,

@@ -37,7 +37,7 @@ impl AtRisk {
     /// `swe_mm` is the headline measure's period value at the reference, `[band][realization]`.
     pub(super) fn of(
         bands: &[Band],
-        swe_mm: ArrayView2<'_, f64>,
+        swe_mm: &ArrayView2<'_, f64>,
         winter_mean_c: &[Vec<f64>],
         levels_c: &[f64],
         reference: usize,
@@ -88,7 +88,7 @@ mod tests {
         let swe_mm = array![[0.0, 0.0], [100.0, 100.0], [300.0, 300.0]];
         let levels_c = [0.0, 1.0, 2.0, 4.0];
         let winter: Vec<Vec<f64>> = levels_c.iter().map(|c| vec![1.0 + c, -1.0 + c, -3.0 + c]).collect();
-        let found = AtRisk::of(&bands, swe_mm.view(), &winter, &levels_c, 0).expect("winters");
+        let found = AtRisk::of(&bands, &swe_mm.view(), &winter, &levels_c, 0).expect("winters");
         let bands: Vec<&[usize]> = found.levels.iter().map(|level| level.bands.as_slice()).collect();
         assert_eq!(bands, [&[][..], &[1], &[1, 2]]);
         let two = &found.levels[1];

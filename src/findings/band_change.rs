@@ -59,7 +59,7 @@ impl BandChangeLevel {
     /// Every level but the reference; `swe_mm` are period values of the headline measure, `[level][band][realization]`.
     pub(super) fn all(
         bands: &[BandFindings],
-        swe_mm: ArrayView3<'_, f64>,
+        swe_mm: &ArrayView3<'_, f64>,
         levels_c: &[f64],
         reference: usize,
     ) -> Vec<Self> {
@@ -69,7 +69,7 @@ impl BandChangeLevel {
 
     fn at(
         bands: &[BandFindings],
-        swe_mm: ArrayView3<'_, f64>,
+        swe_mm: &ArrayView3<'_, f64>,
         level: usize,
         level_c: f64,
         reference: usize,
@@ -77,7 +77,7 @@ impl BandChangeLevel {
         let changes: Vec<Option<BandChange>> = bands
             .iter()
             .enumerate()
-            .map(|(at, band)| BandChange::of(band, swe_mm.index_axis(Axis(1), at), level, reference))
+            .map(|(at, band)| BandChange::of(band, &swe_mm.index_axis(Axis(1), at), level, reference))
             .collect();
         let loses_most = |of: fn(&BandChange) -> Option<f64>| {
             let losses =
@@ -104,7 +104,7 @@ impl BandChangeLevel {
 impl BandChange {
     fn of(
         of_band: &BandFindings,
-        swe_mm: ArrayView2<'_, f64>,
+        swe_mm: &ArrayView2<'_, f64>,
         level: usize,
         reference: usize,
     ) -> Option<Self> {

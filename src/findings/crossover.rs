@@ -77,7 +77,7 @@ impl Crossover {
     fn at(
         level_c: f64,
         rows: &[&Row],
-        swe_mm: ArrayView3<'_, f64>,
+        swe_mm: &ArrayView3<'_, f64>,
         [mean_c, precipitation_mm]: [&Array2<f64>; 2],
         resamples: &Resamples,
     ) -> Self {
@@ -95,7 +95,7 @@ impl Crossover {
 
     pub(super) fn all(
         rows: &[Row],
-        band_years_mm: ndarray::ArrayView4<'_, f64>,
+        band_years_mm: &ndarray::ArrayView4<'_, f64>,
         values: &YearValues<'_>,
         levels_c: &[f64],
         reference: usize,
@@ -113,7 +113,7 @@ impl Crossover {
         let levels = levels_c.iter().enumerate().map(|(level, level_c)| {
             let of_level = values.at(level);
             let both = [&of_level.mean_c.to_owned(), &of_level.precipitation_mm.to_owned()];
-            Self::at(*level_c, &rows, at(level), both, resamples)
+            Self::at(*level_c, &rows, &at(level), both, resamples)
         });
         levels.collect()
     }
@@ -121,7 +121,7 @@ impl Crossover {
 
 fn sums_of(
     row: &Row,
-    swe_mm: ArrayView3<'_, f64>,
+    swe_mm: &ArrayView3<'_, f64>,
     mean_c: &Array2<f64>,
     precipitation_mm: &Array2<f64>,
 ) -> Vec<Sums> {
@@ -226,7 +226,7 @@ mod tests {
             let [a, b] = parts[band];
             100.0 + 3.0 * (b * mm[[realization, year]] - a * mean_c[[realization, year]])
         });
-        Crossover::at(0.0, &rows, swe_mm.view(), [&mean_c, &mm], &Resamples::new(1, 3))
+        Crossover::at(0.0, &rows, &swe_mm.view(), [&mean_c, &mm], &Resamples::new(1, 3))
     }
 
     #[test]

@@ -80,7 +80,7 @@ impl Places {
         let swe_mm = study.band_periods.index_axis(Axis(2), 0);
         let grounds = Grounds { rows: &rows, swe_mm, winter_mean_c };
         let crossover = values.as_ref().map(|values| {
-            Crossover::all(&rows, study.band_headline.view(), values, levels_c, reference, &resamples)
+            Crossover::all(&rows, &study.band_headline.view(), values, levels_c, reference, &resamples)
         });
         Some(Self {
             coincidence: values.as_ref().and_then(|of| Coincidence::of(of, levels_c, reference, &resamples)),
@@ -89,11 +89,11 @@ impl Places {
                 .as_ref()
                 .and_then(|of| SnowDroughts::of(of, levels_c, reference, &resamples)),
             crossover: crossover.unwrap_or_default(),
-            band_change: BandChangeLevel::all(&findings.bands, swe_mm, levels_c, reference),
+            band_change: BandChangeLevel::all(&findings.bands, &swe_mm, levels_c, reference),
             snow_line: SnowLine::of(&grounds, questions.snow_line_swe_mm, levels_c, reference),
             at_risk: AtRisk::of(
                 bands,
-                swe_mm.index_axis(Axis(0), reference),
+                &swe_mm.index_axis(Axis(0), reference),
                 winter_mean_c,
                 levels_c,
                 reference,

@@ -17,6 +17,7 @@ mod together;
 mod volumes;
 mod warm_years;
 mod yardsticks;
+mod years;
 
 use super::answer::Answer;
 use super::generator_sheet::snow_mismatch;
@@ -72,6 +73,7 @@ pub fn briefing_html(
         (volumes::section(study, &figures))
         (yardsticks::section(study, answer))
         (together::section(study, answer, &figures))
+        (years::section(study, answer, &figures))
         (parameters::section(study, answer))
         (warm_years::section(study))
         (record::section(study, &figures))

@@ -3,6 +3,7 @@
 //! One file a table, and one line of `tables`.
 
 mod break_even;
+mod by_year;
 mod cells;
 mod criteria;
 mod driest_and_wettest;
@@ -40,6 +41,9 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     add("driest-and-wettest", driest_and_wettest::driest_and_wettest(findings, units));
     add("yardsticks", yardsticks::yardsticks(findings, units));
     add("record-range", record_range::record_range(findings, units));
+    for (name, table) in findings.by_year.iter().flat_map(|found| by_year::by_year(found, units)) {
+        add(name, table);
+    }
     if let Some(spread) = &findings.parameter_spread {
         add("parameter-spread", parameter_spread::parameter_spread(spread, units));
     }

@@ -2,16 +2,18 @@
 
 mod cases;
 mod criteria;
+mod low_snow;
 mod periods_compared;
 mod projections;
 mod snow_line;
 mod surface;
+mod warming_rate;
 
 pub use projections::{PROJECTIONS_KEY, read_projections};
 pub use surface::SurfaceTyped;
 
 use super::section::Section;
-use crate::findings::{Criterion, NamedChange};
+use crate::findings::{Criterion, NamedChange, WarmingRate};
 
 /// What is asked, as typed.
 #[derive(Debug, Clone)]
@@ -28,6 +30,10 @@ pub struct FindingsTyped {
     pub periods_compared: periods_compared::PeriodsComparedTyped,
     /// Where snow begins.
     pub snow_line: snow_line::SnowLineTyped,
+    /// What a low-snow year is.
+    pub low_snow: low_snow::LowSnowTyped,
+    /// The user's rate of warming, if one is stated.
+    pub warming_rate: Option<WarmingRate>,
 }
 
 impl FindingsTyped {
@@ -45,9 +51,16 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<String>, Option<Findings
     let criteria = criteria::read(section.sections("criteria"));
     let periods_compared = periods_compared::read(section.section("periods_compared"));
     let snow_line = snow_line::read(section.section("snow_line"));
+    let low_snow = low_snow::read(section.section("low_snow"));
+    let states_rate = section.has("warming_rate");
+    let warming_rate = warming_rate::read(section.section("warming_rate"));
     section.finish();
     let typed = || {
         let projections_file = projections_file.clone();
+        // A rate that was typed with a fault is none to run with.
+        if states_rate && warming_rate.is_none() {
+            return None;
+        }
         Some(FindingsTyped {
             surface: surface?,
             cases: cases?,
@@ -55,6 +68,8 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<String>, Option<Findings
             criteria: criteria?,
             periods_compared,
             snow_line,
+            low_snow,
+            warming_rate,
         })
     };
     let typed = typed();

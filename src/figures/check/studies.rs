@@ -4,7 +4,7 @@ use super::super::{FIGURES, Figure, Setting, Svg};
 use crate::basin::{Band, Ground};
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::ensemble::{BasinSeasons, COUNTED_DAYS, Seasons, Silent, SweBins, SweDays};
-use crate::findings::{Findings, Places, PlacesQuestions, Questions, Runs, answer};
+use crate::findings::{ByYear, ByYearQuestions, Findings, Places, PlacesQuestions, Questions, Runs, answer};
 use crate::season::{Kind, Measure, NONE, NOT_GONE, Place};
 use crate::units::UnitSystem;
 use ndarray::{Array3, Array4};
@@ -155,11 +155,13 @@ impl Study<'_> {
         let reference_c = self.levels_c[self.reference];
         let surface =
             super::surfaces::made(&seasons.basin.measures[0], [self.swe[0], self.swe[2]], reference_c);
+        let by_year = self.by_year(&seasons.basin, &bands);
         let findings = Findings {
             years: 30,
             record: Some(record),
             generator,
             surface: Some(surface),
+            by_year,
             ..answer(&runs, &questions, &Silent).unwrap()
         };
         // Warmth that knows nothing of the amounts; SWE itself stands for precipitation.
@@ -186,6 +188,30 @@ impl Study<'_> {
             &findings,
         );
         Findings { places, ..findings }
+    }
+
+    /// The same study's realizations with five years each, which vary about the period value.
+    fn by_year(&self, basin: &BasinSeasons, bands: &[Band]) -> Option<ByYear> {
+        let (levels, measures, realizations, _) = basin.years.dim();
+        let one = |at: (usize, usize, usize, usize)| {
+            let (level, measure, realization, year) = at;
+            let wave = ((realization * 7 + year * 3) % 11) as f64 / 5.0 - 1.0;
+            basin.years[[level, measure, realization, 0]] * (1.0 + 0.3 * wave).max(0.0)
+        };
+        let years = Array4::from_shape_fn((levels, measures, realizations, 5), one);
+        let basin = BasinSeasons { years, ..basin.clone() };
+        ByYear::of(
+            &basin,
+            &ByYearQuestions {
+                levels_c: self.levels_c,
+                reference: self.reference,
+                seed: 7,
+                low_snow_below_quantile: 0.2,
+                warming_rate: None,
+                record: &[],
+                bands,
+            },
+        )
     }
 
     /// Of a part of a range.

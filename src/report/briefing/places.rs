@@ -22,7 +22,7 @@ pub(super) fn years(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     html! { @if let Some(found) = coincidence {
         h2 { "Dry years and warm ones" }
         p { (dry_and_warm(found, findings, reader)) }
-        (figures.of(Part::Years))
+        (figures.of(Part::DryAndWarm))
         p { (depends(found, findings)) }
         @if let Some(record) = record { p { (of_record(record)) } }
         @if let Some(droughts) = droughts { p { (kinds_of_drought(droughts, findings, reader)) } }
