@@ -2,7 +2,7 @@
 //!
 //! A trend or a step in the record says how far its years stand for one climate. `seasons` makes yearly values of it;
 //! `mann_kendall`, `theil_sen` and `pettitt` ask them for a trend, its size and a step; `wilson` is the interval of a
-//! count over the record's years; `detrend` takes a trend of temperature out; `years` says of which years a normal is the
+//! count over the record's years, `risk_ratio` that of two of them; `detrend` takes a trend of temperature out; `years` says of which years a normal is the
 //! median. A test sees nothing of a series but its
 //! `ranks`, years and values.
 
@@ -10,6 +10,7 @@ mod detrend;
 mod mann_kendall;
 mod pettitt;
 mod ranks;
+mod risk_ratio;
 mod seasons;
 #[cfg(test)]
 mod tests;
@@ -20,6 +21,7 @@ mod years;
 pub use detrend::{Detrended, detrend};
 pub use mann_kendall::{MannKendall, ScoreTest, mann_kendall};
 pub use pettitt::{Pettitt, pettitt};
+pub use risk_ratio::{RiskRatio, risk_ratio};
 pub use seasons::{SeasonYears, Seasons, Yearly};
 pub use theil_sen::{TheilSen, theil_sen};
 pub use wilson::wilson;

@@ -15,6 +15,7 @@ mod level_groups;
 mod output;
 mod own_years;
 mod parameter_sets;
+mod places;
 mod pool;
 mod progress;
 mod ready;

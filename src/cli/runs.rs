@@ -3,15 +3,17 @@
 use super::failure::Failure;
 use super::generator_sheet::{generator_sheet, realizations_of_the_sheet};
 use super::level_groups::LevelGroups;
+use super::own_years::own_years;
 use super::parameter_sets::{realizations_of_sets, run_sets};
+use super::places::places;
 use super::progress::Progress;
 use super::ready::Ready;
 use super::rule_panel::rule_panel;
 use super::surface::warmed;
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
-    Findings, OtherChange, ParameterSpread, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Refit,
-    Runs, TIMES_ASSUMED, answer, warm_year_biases,
+    ByYear, ByYearQuestions, Findings, OtherChange, ParameterSpread, Questions, REALIZATIONS_OF_A_RECORD,
+    RESAMPLED_RECORDS, Refit, Runs, TIMES_ASSUMED, answer, warm_year_biases,
 };
 use crate::perturb::{Generator, MeanChange, TemperatureHeld};
 use crate::season::Measures;
@@ -109,6 +111,21 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         seed: scenario.seed,
     };
     let findings = answer(&runs, &questions, progress).map_err(halted)?;
+    let places = places(ready, &plan, &groups.changes, &study, &findings).map_err(open)?;
+    let (record_years, _) = own_years(ready, measures)?;
+    let asked = &scenario.findings;
+    let by_year = ByYear::of(
+        &study.basin,
+        &ByYearQuestions {
+            levels_c: &warming.levels_c,
+            reference: warming.reference,
+            seed: scenario.seed,
+            low_snow_below_quantile: asked.low_snow.below_quantile,
+            warming_rate: asked.warming_rate,
+            record: &record_years,
+            bands: &ready.basin.bands,
+        },
+    );
     let parameter_spread = of_sets
         .and_then(|sets| ParameterSpread::of(&sets, &findings.basin, &warming.levels_c, warming.reference));
     let reference_c = warming.levels_c[warming.reference];
@@ -121,12 +138,14 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let generator = Some(generator_sheet);
     Ok(Findings {
         surface,
+        by_year,
         break_even,
         parameter_spread,
         rule_panel,
         warm_year_biases,
         comparisons,
         generator,
+        places,
         ..findings
     })
 }

@@ -5,6 +5,7 @@ use super::assemble::assemble;
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::own_years::own_years;
+use super::places;
 use super::pool::in_pool;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
 use super::ready::Ready;
@@ -63,6 +64,7 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     let findings = in_pool(shared, || runs::find(&ready, &measures, &progress))??;
     let (years, record) = own_years(&ready, &measures)?;
     let findings = Findings { record, ..findings };
+    let findings = places::with_record(findings, &ready, &years, measures.list());
 
     progress.stage("writing figures, tables and briefing");
     let study = describe(&ready, &measures, years, &findings, path, shared);
@@ -183,8 +185,8 @@ fn target(ready: &Ready, shared: &Shared) -> Result<PathBuf, Failure> {
     }
 }
 
-/// Refuses a study whose results would not fit: single years of the basin, period values of the bands, single years of the
-/// resampled records.
+/// Refuses a study whose results would not fit: single years of the basin, period values of the bands and
+/// single years of their headline measure, single years of the resampled records.
 fn check_size(ready: &Ready, measures: usize, shared: &Shared) -> Result<(), Failure> {
     let realizations = &ready.scenario.realizations;
     let kept_of_each = realizations.years + ready.basin.bands.len();
@@ -192,7 +194,8 @@ fn check_size(ready: &Ready, measures: usize, shared: &Shared) -> Result<(), Fai
     let of_records = realizations.count.min(REALIZATIONS_OF_A_RECORD) * RESAMPLED_RECORDS;
     let of_records = f64::from(of_records) * realizations.years as f64;
     let kept = f64::from(realizations.count) * kept_of_each as f64 + of_records;
-    let bytes = kept * (levels * measures) as f64 * 8.0;
+    let of_bands = f64::from(realizations.count) * (realizations.years * ready.basin.bands.len()) as f64;
+    let bytes = (kept * measures as f64 + of_bands) * levels as f64 * 8.0;
     if bytes <= MOST_KEPT_BYTES {
         return Ok(());
     }

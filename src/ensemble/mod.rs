@@ -2,6 +2,7 @@
 
 mod bench;
 mod climate;
+mod cool_season;
 mod memory;
 mod nodes;
 mod plan;
@@ -14,6 +15,7 @@ mod swe_days;
 mod watch;
 
 pub use climate::{BandClimate, WinterMonths, band_climates, snow_that_piles_up};
+pub use cool_season::cool_season_mean_c;
 pub use nodes::NodeRuns;
 pub use plan::{LevelGroup, Plan};
 pub use record::{RecordRun, RecordYear};

@@ -17,6 +17,8 @@ pub(super) struct Kept {
     pub basin: BasinKept,
     /// `[level][band][measure]`: the period value.
     pub band_periods: Vec<f64>,
+    /// `[level][band][year]`: the headline measure, which comes first.
+    pub band_headline: Vec<f64>,
     /// `[level][band][measure]`: years with none, and years whose snow never went.
     pub band_undefined: Vec<[u32; 2]>,
 }
@@ -182,6 +184,7 @@ impl<'p> Workshop<'p> {
         let mut kept = Kept {
             basin: self.keep_basin(|bench| bench.lanes.first_mix_column()),
             band_periods: Vec::with_capacity(levels * bands * measures.len()),
+            band_headline: Vec::with_capacity(levels * bands * self.plan.years),
             band_undefined: Vec::with_capacity(levels * bands * measures.len()),
         };
         let mut one = Vec::with_capacity(self.plan.years);
@@ -192,6 +195,9 @@ impl<'p> Workshop<'p> {
                 for (number, measure) in measures.iter().enumerate() {
                     one.clear();
                     one.extend(bench.column(number, measures.len(), bench.lanes.column(level, band)));
+                    if number == 0 {
+                        kept.band_headline.extend(&one);
+                    }
                     let count = |what: f64| one.iter().filter(|value| **value == what).count() as u32;
                     kept.band_undefined.push([count(NONE), count(NOT_GONE)]);
                     kept.band_periods.push(period_value(measure.kind, &mut one));

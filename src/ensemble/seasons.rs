@@ -1,4 +1,5 @@
-//! What a run keeps: single years for the basin, period values for the bands, counts for the days.
+//! What a run keeps: single years for the basin, period values for the bands and single years of their headline measure, counts
+//! for the days.
 
 use super::plan::Plan;
 use super::realization::Kept;
@@ -15,6 +16,8 @@ pub struct Seasons {
     pub band_periods: Array4<f64>,
     /// `[level][band][measure]`: over all realizations, years with none and years whose snow never went.
     pub band_undefined: Array3<[u32; 2]>,
+    /// `[level][band][realization][year]`: single years of the headline measure, which comes first.
+    pub band_headline: Array4<f64>,
     /// SWE of the basin on every day of the water year.
     pub swe_days: SweDays,
 }
@@ -68,11 +71,14 @@ impl Seasons {
             basin,
             band_periods: Array4::zeros((levels, bands, count, kept.len())),
             band_undefined: Array3::from_elem((levels, bands, count), [0, 0]),
+            band_headline: Array4::zeros((levels, bands, kept.len(), plan.years)),
             swe_days,
         };
         for (realization, kept) in kept.iter().enumerate() {
             let mut bands = seasons.band_periods.index_axis_mut(Axis(3), realization);
             bands.iter_mut().zip(&kept.band_periods).for_each(|(place, value)| *place = *value);
+            let mut headline = seasons.band_headline.index_axis_mut(Axis(2), realization);
+            headline.iter_mut().zip(&kept.band_headline).for_each(|(place, value)| *place = *value);
             for (sum, [none, not_gone]) in seasons.band_undefined.iter_mut().zip(&kept.band_undefined) {
                 sum[0] += none;
                 sum[1] += not_gone;

@@ -1,6 +1,7 @@
 //! Tests of whole figures: text inside and apart, numbers that are numbers, titles that turn with the findings.
 
 mod bands;
+mod by_year;
 mod comparisons;
 mod days;
 mod fits;
@@ -170,6 +171,7 @@ fn each_figure_is_named_for_readers_who_do_not_see_it() {
         let of_years = "60 realizations of 30 years";
         let said: &[&str] = match slug {
             "record-years" | "record-precipitation" => &[],
+            "dry-and-warm" => &[of_years, "Monte Carlo", "at each warming level", "not day-to-day variation"],
             "generator-sheet" => &["20 realizations of 5 years", "5–95 %", "not day-to-day variation"],
             "swe-through-year" => {
                 &[of_years, "10–90 %", "11 single years a level", "not day-to-day variation"]
@@ -215,6 +217,7 @@ fn figures_without_their_measures_are_not_drawn() {
         basin: Vec::new(),
         surface: None,
         rule_panel: None,
+        by_year: None,
         record: None,
         generator: None,
         ..PLAIN.findings()

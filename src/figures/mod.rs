@@ -7,11 +7,14 @@ mod against;
 mod apart;
 mod axes;
 mod backend;
+mod change_against_spread;
 mod daily;
+mod dry_and_warm;
 mod fits;
 mod generator_sheet;
 mod headline;
 mod labels;
+mod low_snow_odds;
 mod marks;
 mod melt_timing;
 mod observed_swe;
@@ -28,12 +31,14 @@ mod shown;
 mod survey_error;
 mod swe_by_band;
 mod swe_by_level;
+mod swe_change_by_band;
 mod swe_pair;
 mod swe_through_year;
 mod text_width;
 pub mod theme;
 mod thin;
 mod value_ticks;
+mod variance_by_period;
 mod window_volume;
 mod winters_not_seen;
 
@@ -74,10 +79,14 @@ pub enum Part {
     Timing,
     /// Where is it lost?
     Elevation,
+    /// Which years are dry and warm?
+    DryAndWarm,
     /// How much water is it?
     Volumes,
     /// What do warming and precipitation make together?
     Together,
+    /// What do single years say of it?
+    Years,
     /// Is it the model's choice?
     Rules,
     /// What is it drawn from?
@@ -87,13 +96,18 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 10] = [
+pub const FIGURES: [Figure; 15] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
     swe_by_band::FIGURE,
+    swe_change_by_band::FIGURE,
+    dry_and_warm::FIGURE,
     window_volume::FIGURE,
     response_surface::FIGURE,
+    low_snow_odds::FIGURE,
+    variance_by_period::FIGURE,
+    change_against_spread::FIGURE,
     rule_panel::FIGURE,
     record_years::FIGURE,
     record_precipitation::FIGURE,

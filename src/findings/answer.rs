@@ -1,9 +1,11 @@
 //! Puts every question to a study's runs, measure by measure, for the basin and for each band.
 
 use super::break_even::BreakEven;
+use super::by_year::ByYear;
 use super::generator_sheet::GeneratorSheet;
 use super::measure::{Asked, Found, MeasureFindings};
 use super::parameter_spread::ParameterSpread;
+use super::places::Places;
 use super::record::RecordFindings;
 use super::record_range::{RecordRange, Refit};
 use super::resample::Resamples;
@@ -91,10 +93,17 @@ pub struct Findings {
     /// The model's error in warm winters beside the warming's effect; where a file of fitted parameters tells of it.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub warm_year_biases: Vec<WarmYearBias>,
+    /// What single years say: variance by averaging period, low-snow odds, worst years, runs, tails, detection. Whoever has the
+    /// record's own years asks it.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub by_year: Option<ByYear>,
     /// Of the basin mean, one entry a measure, the headline's first.
     pub basin: Vec<MeasureFindings>,
     /// Of each band, from the lowest.
     pub bands: Vec<BandFindings>,
+    /// Where and in which years the snow is lost. Found beside the runs: whoever has the weather adds it.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub places: Option<Places>,
     /// The model against observed snow, one entry a site. No ensemble is asked for it: whoever has it adds it.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub comparisons: Vec<Comparison>,
@@ -165,8 +174,10 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         parameter_spread: None,
         rule_panel: None,
         warm_year_biases: Vec::new(),
+        by_year: None,
         basin,
         bands: bands.collect(),
+        places: None,
         comparisons: Vec::new(),
         generator: None,
         record: None,

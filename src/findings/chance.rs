@@ -20,7 +20,7 @@ pub struct Chance {
 }
 
 impl Chance {
-    fn new(estimate: Estimate, realizations: usize) -> Self {
+    pub(super) fn new(estimate: Estimate, realizations: usize) -> Self {
         let is_certain = estimate.value <= 0.0 || estimate.value >= 1.0;
         let bound = is_certain.then(|| 1.0 - libm::pow(0.05, 1.0 / realizations as f64));
         Self { estimate, bound }

@@ -1,5 +1,220 @@
-//! What a low-snow year is.
+//! Low-snow odds: how often a year has as little snow as few of the reference's have.
 
-/// A low-snow year is one whose survey-date SWE lies below this quantile of the reference's single years: one in five, common
-/// practice.
+use super::ranged::{Ranged, bound_of_certain};
+use super::resample::{Ranked, Resamples};
+use crate::baseline::{RiskRatio, risk_ratio, wilson};
+use serde::Serialize;
+
+/// A low-snow year lies below this quantile of the reference's single years, where a study states no other.
 pub const LOW_SNOW_BELOW_QUANTILE: f64 = 0.2;
+
+/// Chances of a low-snow year.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct LowSnow {
+    /// Quantile of the reference's single years below which a year is low.
+    pub below_quantile: f64,
+    /// The SWE there, mm; in every resample it is the resample's own.
+    pub below_mm: Ranged,
+    /// Single years of a level.
+    pub years: usize,
+    /// One entry a level.
+    pub levels: Vec<LowSnowLevel>,
+    /// The level of 0 degC, the climate of the record, against levels colder than it: the warming so far taken away.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub without_warming: Vec<WithoutWarming>,
+    /// The record's own years.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub record: Option<RecordLowSnow>,
+}
+
+/// Chance at one level.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct LowSnowLevel {
+    /// The level, degC.
+    pub level_c: f64,
+    /// Low years of all simulated ones.
+    pub low_years: usize,
+    /// Their share.
+    pub chance: Ranged,
+    /// Where none is low, the one-sided 95 % bound on the chance from above, `1 - 0.05^(1/n)` of n realizations; where all are, from
+    /// below, `0.05^(1/n)`.
+    pub bound: Option<f64>,
+    /// Over the reference's chance; 1 at the reference.
+    pub chance_ratio: Ranged,
+}
+
+/// The climate of the record over one without so much warming.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct WithoutWarming {
+    /// The colder level, degC.
+    pub level_c: f64,
+    /// The chance at 0 degC over that at the colder level; none where no year of that is low.
+    pub chance_ratio: Option<Ranged>,
+}
+
+/// The record's own years below the same SWE, one entry a level.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct RecordLowSnow {
+    /// Years in use.
+    pub years: usize,
+    /// One entry a level.
+    pub levels: Vec<RecordLowSnowLevel>,
+}
+
+/// The record at one level.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct RecordLowSnowLevel {
+    /// The level, degC.
+    pub level_c: f64,
+    /// Low years.
+    pub low_years: usize,
+    /// Wilson's 95 % interval of their share.
+    pub wilson_95: [f64; 2],
+    /// Over the reference's share, after Katz et al. (1978): the same years at both levels are taken for independent, which
+    /// makes the interval wider than it is. None at the reference, or where a count is zero.
+    pub chance_ratio: Option<RiskRatio>,
+}
+
+/// What the odds are taken of.
+pub(super) struct LowSnowQuestions<'a> {
+    pub levels_c: &'a [f64],
+    pub reference: usize,
+    pub below_quantile: f64,
+    pub realizations: usize,
+    /// SWE of the record's years `[level][year]`, mm; may be empty.
+    pub record_mm: &'a [Vec<f64>],
+}
+
+/// Of one set of realizations: the limit, mm, and the chance at every level.
+type Drawn = (f64, Vec<f64>);
+
+impl LowSnow {
+    /// The odds of single years, a ranked list a level; nothing where the reference's quantile is bare ground, below which
+    /// nothing lies.
+    pub(super) fn of(years: &[Ranked], asked: &LowSnowQuestions<'_>, resamples: &Resamples) -> Option<Self> {
+        let LowSnowQuestions { levels_c, reference, below_quantile, realizations, .. } = *asked;
+        let count = years[reference].values().len();
+        let draw = |weights: &[u32]| -> Option<Drawn> {
+            let [limit] = years[reference].quantiles(weights, [below_quantile])?;
+            // Every resample draws as many realizations, of as many years.
+            let chance = |level: &Ranked| {
+                let low = level.values().iter().take_while(|(mm, _)| *mm < limit);
+                // A sum of counts: one of no numbers would be a zero below zero.
+                low.map(|(_, realization)| weights[*realization] as usize).sum::<usize>() as f64
+                    / count as f64
+            };
+            Some((limit, years.iter().map(chance).collect()))
+        };
+        let (below_mm, chances) = draw(&vec![1; realizations])?;
+        if !(below_mm > 0.0 && below_mm.is_finite()) || chances[reference] <= 0.0 {
+            return None;
+        }
+        let resampled = resamples.each(draw);
+        let of = |number: &dyn Fn(&Drawn) -> Option<f64>| {
+            resampled.iter().map(|drawn| drawn.as_ref().and_then(number)).collect::<Vec<_>>()
+        };
+        let over = |above: usize, below: usize| {
+            let ratio =
+                move |chances: &[f64]| (chances[below] > 0.0).then(|| chances[above] / chances[below]);
+            Some(Ranged::new(ratio(&chances)?, of(&|(_, chances)| ratio(chances))))
+        };
+        let levels = levels_c.iter().enumerate().map(|(level, level_c)| {
+            Some(LowSnowLevel {
+                level_c: *level_c,
+                low_years: years[level].values().iter().take_while(|(mm, _)| *mm < below_mm).count(),
+                chance: Ranged::new(chances[level], of(&|(_, chances)| Some(chances[level]))),
+                bound: bound_of_certain(chances[level], realizations),
+                chance_ratio: over(level, reference)?,
+            })
+        });
+        let as_observed = levels_c.iter().position(|level_c| *level_c == 0.0);
+        let colder = |now: usize| {
+            let one = move |level: usize| WithoutWarming {
+                level_c: levels_c[level],
+                chance_ratio: over(now, level),
+            };
+            (0..now).map(one).collect()
+        };
+        Some(Self {
+            below_quantile,
+            below_mm: Ranged::new(below_mm, of(&|(limit, _)| Some(*limit))),
+            years: count,
+            levels: levels.collect::<Option<_>>()?,
+            without_warming: as_observed.map_or_else(Vec::new, colder),
+            record: RecordLowSnow::of(asked, below_mm),
+        })
+    }
+}
+
+impl RecordLowSnow {
+    fn of(asked: &LowSnowQuestions<'_>, below_mm: f64) -> Option<Self> {
+        let years = asked.record_mm.get(asked.reference).map(Vec::len).filter(|years| *years > 0)?;
+        let low = |level: &Vec<f64>| level.iter().filter(|mm| **mm < below_mm).count();
+        let at_reference = low(&asked.record_mm[asked.reference]);
+        let of_level = |(level, level_c): (usize, &f64)| {
+            let low_years = low(asked.record_mm.get(level)?);
+            let is_other = level != asked.reference;
+            Some(RecordLowSnowLevel {
+                level_c: *level_c,
+                low_years,
+                wilson_95: wilson(low_years, years)?,
+                chance_ratio: is_other
+                    .then(|| risk_ratio([low_years, years], [at_reference, years]))
+                    .flatten(),
+            })
+        };
+        let levels = asked.levels_c.iter().enumerate().map(of_level).collect::<Option<_>>()?;
+        Some(Self { years, levels })
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    fn ranked(values: impl Iterator<Item = f64>) -> Ranked {
+        Ranked::new(values.enumerate().map(|(at, value)| (value, at % 20)))
+    }
+
+    /// By hand: 1 to 100 mm, below the 20 % quantile of type 8 (rank 20.4) lie 20 years; 15 mm less put 35 below it, a
+    /// ratio of 1.75; 25 mm more leave none, of which 20 realizations are sure to 1 - 0.05^(1/20) = 0.1391.
+    #[test]
+    fn odds_by_hand() {
+        let years = [25.0, 0.0, -15.0].map(|more| ranked((1..=100).map(|mm| f64::from(mm) + more)));
+        let record_mm = [25.0, 0.0, -15.0].map(|more| [5.0, 30.0, 40.0].map(|mm| mm + more).to_vec());
+        let asked = LowSnowQuestions {
+            levels_c: &[-1.0, 0.0, 1.0],
+            reference: 1,
+            below_quantile: LOW_SNOW_BELOW_QUANTILE,
+            realizations: 20,
+            record_mm: &record_mm,
+        };
+        let found = LowSnow::of(&years, &asked, &Resamples::new(1, 20)).unwrap();
+        assert_eq!(found.levels.iter().map(|at| at.low_years).collect::<Vec<_>>(), [0, 20, 35]);
+        assert!((found.below_mm.value - 20.4).abs() < 1e-9, "{found:?}");
+        let [colder, reference, warmer] = &found.levels[..] else { panic!("{found:?}") };
+        assert_eq!(reference.chance_ratio.value, 1.0, "an identity");
+        assert!((warmer.chance_ratio.value - 1.75).abs() < 1e-12);
+        assert!(warmer.chance.q05.unwrap() < 0.35 && warmer.chance.q95.unwrap() > 0.35);
+        assert!((colder.bound.unwrap() - 0.1391).abs() < 1e-4);
+        assert_eq!(found.without_warming[0].chance_ratio, None, "no year there is low");
+        // 1 of 3 at the reference, 2 of 3 at the warmer level (15 and 25 less 15 mm: -10 and 15).
+        let record = found.record.unwrap();
+        assert_eq!(record.levels.iter().map(|at| at.low_years).collect::<Vec<_>>(), [0, 1, 2]);
+        assert_eq!(record.levels[2].chance_ratio.unwrap().ratio, 2.0);
+    }
+
+    /// Where a fifth of the reference's years lie bare, nothing lies below: that is no chance of 0.
+    #[test]
+    fn bare_ground_has_no_low_years() {
+        let years = [ranked((0..100).map(|at| if at < 30 { 0.0 } else { 5.0 }))];
+        let asked = LowSnowQuestions {
+            levels_c: &[0.0],
+            reference: 0,
+            below_quantile: LOW_SNOW_BELOW_QUANTILE,
+            realizations: 20,
+            record_mm: &[],
+        };
+        assert_eq!(LowSnow::of(&years, &asked, &Resamples::new(1, 20)), None);
+    }
+}

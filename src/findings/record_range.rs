@@ -25,7 +25,7 @@ const LEAST_REALIZATIONS: usize = 20;
 /// A record with fewer years cannot tell what other records would be like.
 const LEAST_RECORD_YEARS: usize = 10;
 
-/// The range of a number over resampled records, 5 to 95 %.
+/// A range from 5 to 95 %: over resampled records, or over realizations where it is said so.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct Range {
     /// 5 % quantile.
@@ -35,7 +35,7 @@ pub struct Range {
 }
 
 impl Range {
-    fn map(self, unit: impl Fn(f64) -> f64) -> Self {
+    pub(super) fn map(self, unit: impl Fn(f64) -> f64) -> Self {
         Self { q05: unit(self.q05), q95: unit(self.q95) }
     }
 }

@@ -9,6 +9,7 @@ mod normal;
 mod observed;
 mod parameters;
 mod perennial;
+mod places;
 mod record;
 mod replayed_years;
 mod rule_panel;
@@ -18,6 +19,7 @@ mod together;
 mod volumes;
 mod warm_years;
 mod yardsticks;
+mod years;
 
 use super::answer::Answer;
 use super::generator_sheet::snow_mismatch;
@@ -67,10 +69,13 @@ pub fn briefing_html(
         (snow::section(study, answer))
         (snow::timing(study, &figures))
         (elevation::section(study, &figures))
+        (places::elevations(study))
         (perennial::paragraph(study))
+        (places::years(study, &figures))
         (volumes::section(study, &figures))
         (yardsticks::section(study, answer))
         (together::section(study, answer, &figures))
+        (years::section(study, answer, &figures))
         (parameters::section(study, answer))
         (rule_panel::section(study, &figures))
         (warm_years::section(study))

@@ -88,6 +88,13 @@ impl Reader {
         format!("{} {}", self.elevation_bare(elevation_m), self.units.elevation().word)
     }
 
+    /// `154 m for each °C`: how far a line rises with warming.
+    pub fn elevation_per_degree(self, rise_m_per_c: f64) -> String {
+        let (elevation, warming) = (self.units.elevation(), self.units.warming());
+        let rise = fixed(elevation.of(rise_m_per_c) / warming.of(1.0), 0);
+        format!("{rise} {} for each {}", elevation.word, warming.word)
+    }
+
     /// The same without its unit.
     pub fn elevation_bare(self, elevation_m: f64) -> String {
         fixed(self.units.elevation().of(elevation_m), 0)

@@ -3,12 +3,15 @@
 //! One file a table, and one line of `tables`.
 
 mod break_even;
+mod by_year;
 mod cells;
 mod criteria;
 mod driest_and_wettest;
+mod dry_and_warm;
 mod elasticities;
 mod generator_sheet;
 mod ground;
+mod lines;
 mod measures;
 mod parameter_spread;
 mod record_range;
@@ -40,6 +43,9 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     add("driest-and-wettest", driest_and_wettest::driest_and_wettest(findings, units));
     add("yardsticks", yardsticks::yardsticks(findings, units));
     add("record-range", record_range::record_range(findings, units));
+    for (name, table) in findings.by_year.iter().flat_map(|found| by_year::by_year(found, units)) {
+        add(name, table);
+    }
     if let Some(spread) = &findings.parameter_spread {
         add("parameter-spread", parameter_spread::parameter_spread(spread, units));
     }
@@ -63,6 +69,23 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     add("swe-through-year", through_year::through_year(&findings.swe_through_year, study.reader));
     if let Some(sheet) = &findings.generator {
         add("generator-sheet", generator_sheet::generator_sheet(sheet, units));
+    }
+    if let Some(places) = &findings.places {
+        if let Some(found) = &places.coincidence {
+            add("dry-and-warm", dry_and_warm::dry_and_warm(found, units));
+        }
+        if let Some(found) = &places.record_coincidence {
+            add("dry-and-warm-record", dry_and_warm::dry_and_warm_record(found));
+        }
+        if let Some(found) = &places.snow_droughts {
+            add("snow-droughts", dry_and_warm::snow_droughts(found, units));
+        }
+        add("swe-change-by-band", lines::swe_change_by_band(places, findings, units));
+        add("snow-lines", lines::snow_lines(places, units));
+        add("what-decides", lines::what_decides(&places.crossover, units));
+        if let Some(found) = &places.at_risk {
+            add("at-risk-snow", lines::at_risk_snow(found, units));
+        }
     }
     add("record-years", record_years::record_years(study));
     if let Some((record, found)) =

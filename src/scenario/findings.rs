@@ -2,10 +2,14 @@
 
 mod cases;
 mod criteria;
+mod low_snow;
+mod periods_compared;
 mod projections;
 mod replayed_years;
 mod rule_panel;
+mod snow_line;
 mod surface;
+mod warming_rate;
 
 pub use projections::{PROJECTIONS_KEY, read_projections};
 pub use replayed_years::{ReplayedYearsTyped, YEARS_KEY as REPLAYED_YEARS_KEY};
@@ -13,7 +17,7 @@ pub use rule_panel::{REALIZATIONS_KEY as RULE_PANEL_REALIZATIONS_KEY, RulePanelT
 pub use surface::SurfaceTyped;
 
 use super::section::Section;
-use crate::findings::{Criterion, NamedChange};
+use crate::findings::{Criterion, NamedChange, WarmingRate};
 
 /// What is asked, as typed.
 #[derive(Debug, Clone)]
@@ -30,6 +34,14 @@ pub struct FindingsTyped {
     pub rule_panel: Option<RulePanelTyped>,
     /// Years of the record at every level.
     pub replayed_years: ReplayedYearsTyped,
+    /// Which years of the record are held against the rest.
+    pub periods_compared: periods_compared::PeriodsComparedTyped,
+    /// Where snow begins.
+    pub snow_line: snow_line::SnowLineTyped,
+    /// What a low-snow year is.
+    pub low_snow: low_snow::LowSnowTyped,
+    /// The user's rate of warming, if one is stated.
+    pub warming_rate: Option<WarmingRate>,
 }
 
 impl FindingsTyped {
@@ -47,9 +59,18 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<String>, Option<Findings
     let criteria = criteria::read(section.sections("criteria"));
     let rule_panel = rule_panel::read(&mut section);
     let replayed_years = replayed_years::read(&mut section);
+    let periods_compared = periods_compared::read(section.section("periods_compared"));
+    let snow_line = snow_line::read(section.section("snow_line"));
+    let low_snow = low_snow::read(section.section("low_snow"));
+    let states_rate = section.has("warming_rate");
+    let warming_rate = warming_rate::read(section.section("warming_rate"));
     section.finish();
     let typed = || {
         let projections_file = projections_file.clone();
+        // A rate that was typed with a fault is none to run with.
+        if states_rate && warming_rate.is_none() {
+            return None;
+        }
         Some(FindingsTyped {
             surface: surface?,
             cases: cases?,
@@ -57,6 +78,10 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<String>, Option<Findings
             criteria: criteria?,
             rule_panel,
             replayed_years: replayed_years.clone(),
+            periods_compared,
+            snow_line,
+            low_snow,
+            warming_rate,
         })
     };
     let typed = typed();

@@ -28,6 +28,7 @@ pub use kind::{Kind, LEAST_REFERENCE_MM};
 pub use measure::{Measure, NONE, NOT_GONE, NOT_REACHED, Outcome, Place};
 pub use melt::{MELT_OUT_DAY, keeps_snow};
 pub use period::period_value;
+pub use precipitation::precipitation_before;
 
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::fault::Unlikely;

@@ -15,8 +15,7 @@ pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
     let has_season = |(_, day): &(usize, &MonthDay)| **day != settings.water_year_starts.0;
     let before = settings.survey_dates.iter().enumerate().filter(has_season).map(|(number, day)| {
         let title = format!("precipitation before {}", day.words());
-        let name = format!("precipitation_before_{}_mm", name_of(*day));
-        let measure = Measure::new(Kind::AmountMm, name, title).of_basin();
+        let measure = Measure::new(Kind::AmountMm, precipitation_before(*day), title).of_basin();
         if number == 0 { measure.told_with_extremes() } else { measure }
     });
     [
@@ -27,6 +26,11 @@ pub(super) fn list(settings: &SeasonSettings) -> Vec<Measure> {
     .chain(over_precipitation)
     .chain(before)
     .collect()
+}
+
+/// The name of the measure of all that fell before a survey date.
+pub fn precipitation_before(survey: MonthDay) -> String {
+    format!("precipitation_before_{}_mm", name_of(survey))
 }
 
 /// Takes the family's measures. SWE that lay as the water year began counts in the survey's, so that its share of the

@@ -2,6 +2,7 @@
 
 pub mod basin;
 mod by_elevation;
+mod by_year;
 mod closed_form;
 mod corpus;
 mod data_faults;

@@ -4,7 +4,7 @@ use super::super::{FIGURES, Figure, Setting, Svg};
 use crate::basin::{Band, Ground};
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::ensemble::{BasinSeasons, COUNTED_DAYS, Seasons, Silent, SweBins, SweDays};
-use crate::findings::{Findings, Questions, Runs, answer};
+use crate::findings::{ByYear, ByYearQuestions, Findings, Places, PlacesQuestions, Questions, Runs, answer};
 use crate::season::{Kind, Measure, NONE, NOT_GONE, Place};
 use crate::units::UnitSystem;
 use ndarray::{Array3, Array4};
@@ -121,6 +121,9 @@ impl Study<'_> {
                 (levels, bands_count, measures_count, count),
                 |(l, b, m, r)| in_band(l, b, m, r),
             ),
+            band_headline: Array4::from_shape_fn((levels, bands_count, count, 1), |(l, b, r, _)| {
+                in_band(l, b, 0, r)
+            }),
             band_undefined: Array3::from_elem((levels, bands_count, measures_count), [0, 0]),
             swe_days: self.swe_days(),
         };
@@ -152,16 +155,66 @@ impl Study<'_> {
         let reference_c = self.levels_c[self.reference];
         let surface =
             super::surfaces::made(&seasons.basin.measures[0], [self.swe[0], self.swe[2]], reference_c);
+        let by_year = self.by_year(&seasons.basin, &bands);
         let findings = answer(&runs, &questions, &Silent).unwrap();
         let rule_panel = super::rules::panel(&findings, -50.0, true);
-        Findings {
+        let findings = Findings {
             years: 30,
             record: Some(record),
             generator,
             surface: Some(surface),
+            by_year,
             rule_panel,
             ..findings
-        }
+        };
+        // Warmth that knows nothing of the amounts; SWE itself stands for precipitation.
+        let cool_mean_c = Array3::from_shape_fn((levels, count, 1), |(level, realization, _)| {
+            self.levels_c[level] + (realization * 7 % 11) as f64 - 5.0
+        });
+        let winter_mean_c: Vec<Vec<f64>> = self
+            .levels_c
+            .iter()
+            .map(|c| {
+                bands.iter().map(|band| c + 2.0 - 0.006 * (band.elevation_m - bands[0].elevation_m)).collect()
+            })
+            .collect();
+        let places = Places::of(
+            &PlacesQuestions {
+                study: &seasons,
+                bands: &bands,
+                seed: 7,
+                precipitation: &seasons.basin.measures[0].name,
+                cool_mean_c: Some(&cool_mean_c),
+                winter_mean_c: &winter_mean_c,
+                snow_line_swe_mm: 100.0,
+            },
+            &findings,
+        );
+        Findings { places, ..findings }
+    }
+
+    /// The same study's realizations with five years each, which vary about the period value.
+    fn by_year(&self, basin: &BasinSeasons, bands: &[Band]) -> Option<ByYear> {
+        let (levels, measures, realizations, _) = basin.years.dim();
+        let one = |at: (usize, usize, usize, usize)| {
+            let (level, measure, realization, year) = at;
+            let wave = ((realization * 7 + year * 3) % 11) as f64 / 5.0 - 1.0;
+            basin.years[[level, measure, realization, 0]] * (1.0 + 0.3 * wave).max(0.0)
+        };
+        let years = Array4::from_shape_fn((levels, measures, realizations, 5), one);
+        let basin = BasinSeasons { years, ..basin.clone() };
+        ByYear::of(
+            &basin,
+            &ByYearQuestions {
+                levels_c: self.levels_c,
+                reference: self.reference,
+                seed: 7,
+                low_snow_below_quantile: 0.2,
+                warming_rate: None,
+                record: &[],
+                bands,
+            },
+        )
     }
 
     /// Of a part of a range.

@@ -10,9 +10,12 @@ mod tipping;
 mod verdict;
 mod volumes;
 mod yardstick;
+mod years;
 
+pub(in super::super) use chance::chance as chance_in_words;
 pub use chance::{chance_in_table, towards_shift};
 pub(super) use slopes::{per_degree, percent};
+pub use years::{in_years, range, years_of};
 
 use super::reader::Reader;
 use crate::findings::{Findings, LevelFindings, MeasureFindings, Spread};
@@ -52,6 +55,9 @@ pub struct Answer {
     /// From which warming on something fails that is to hold.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub tipping: Vec<String>,
+    /// What single years say: variance, low-snow odds, worst years, runs, tails, detection.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub years: Vec<String>,
     /// Could chance hide it?
     pub chances: Vec<String>,
 }
@@ -105,6 +111,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
         slopes: slopes::slopes(findings, reader),
         cases: slopes::cases(findings, reader),
         tipping: tipping::tipping(findings, reader),
+        years: years::years(findings, reader),
         chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
     };
     answer.at_a_glance = at_a_glance(findings, headline, &answer, reader);

@@ -1,0 +1,162 @@
+//! What single years say: keys, tables and words, held to their numbers.
+
+use super::basin::Basin;
+use serde_json::Value;
+
+/// A basin whose years all differ: three years of weather alone are drawn over and over, and none lies below their lowest.
+fn with_years_that_differ() -> Basin {
+    let basin = Basin::new();
+    basin.exchange("years = 5", "years = 5\nmean_change_sd_pct = 10");
+    basin
+}
+
+fn study(basin: &Basin, scenario: &str) -> Value {
+    let ended = basin.run(&format!("study {scenario} --into out --force --quiet"));
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    serde_json::from_str(&basin.read("out/summary.json")).unwrap()
+}
+
+fn sentences(summary: &Value) -> Vec<String> {
+    let said = summary["answer"]["years"].as_array().unwrap();
+    said.iter().map(|sentence| sentence.as_str().unwrap().to_owned()).collect()
+}
+
+fn number(of: &Value) -> f64 {
+    of.as_f64().unwrap_or_else(|| panic!("{of} is no number"))
+}
+
+/// No year is said until the user states a rate of warming. By hand: 0.5 degC a decade from 2001 on are reached at w degC in
+/// 2001 + 20 w.
+#[test]
+fn a_rate_of_warming_makes_a_year_of_a_level() {
+    let basin = with_years_that_differ();
+    basin.exchange("levels_c = [0, 2]", "levels_c = [0, 2, 8]");
+    let without = study(&basin, "scenario.toml");
+    let period =
+        |summary: &Value| summary["findings"]["by_year"]["measures"][0]["detection"]["periods"][0].clone();
+    assert_eq!(period(&without)["calendar_year"], Value::Null);
+    assert!(
+        sentences(&without)
+            .iter()
+            .any(|said| said.contains("Without a stated rate of warming none of this has a year"))
+    );
+    basin.exchange(
+        "[realizations]",
+        "[findings.warming_rate]\nc_per_decade = 0.5\nfrom_year = 2001\n\n[realizations]",
+    );
+    let with = period(&study(&basin, "scenario.toml"));
+    assert_eq!(with["leaves_spread"]["crossing"], "at", "{with}");
+    let year = number(&with["calendar_year"]["value"]);
+    assert!((year - 2001.0 - 20.0 * number(&with["leaves_spread"]["level_c"])).abs() < 1e-9, "{with}");
+    basin.exchange("from_year = 2001\n", "");
+    let ended = basin.run("check scenario.toml");
+    assert!(ended.status == 3 && ended.stderr.contains("no 'from_year'"), "{}", ended.stderr);
+}
+
+/// The stated quantile is the reference's own chance, to one year of the 60, and the ratio there is 1, an identity; shares of
+/// each partition add up to 1; what JSON says, the tables say.
+#[test]
+fn identities_of_the_reference_and_of_shares() {
+    let basin = with_years_that_differ();
+    basin.exchange("[realizations]", "[findings.low_snow]\nbelow_quantile = 0.3\n\n[realizations]");
+    let summary = study(&basin, "scenario.toml");
+    let by_year = &summary["findings"]["by_year"];
+    let reference = &by_year["low_snow"]["levels"][0];
+    assert!((number(&reference["chance"]["value"]) - 0.3).abs() <= 1.0 / 60.0 + 1e-12, "{reference}");
+    assert_eq!(number(&reference["chance_ratio"]["value"]), 1.0);
+    for period in by_year["measures"][0]["partitions"][0]["periods"].as_array().unwrap() {
+        let parts = ["level", "realization", "level_by_realization", "year", "level_by_year"];
+        let sum: f64 = parts.iter().filter_map(|part| period[part]["value"].as_f64()).sum();
+        assert!((sum - 1.0).abs() < 1e-12, "{period}");
+    }
+    for table in [
+        "variance-by-averaging-period",
+        "low-snow-odds",
+        "low-runs",
+        "tails",
+        "change-against-spread",
+        "worst-years",
+    ] {
+        let text = basin.read(&format!("out/tables/{table}.csv"));
+        let columns = text.lines().next().unwrap().split(',').count();
+        assert!(
+            text.lines().count() > 1 && text.lines().all(|line| line.split(',').count() == columns),
+            "{table}"
+        );
+    }
+    let odds = basin.read("out/tables/low-snow-odds.csv");
+    let chance = number(&by_year["low_snow"]["levels"][1]["chance"]["value"]);
+    assert!(odds.lines().nth(2).unwrap().split(',').any(|cell| cell == chance.to_string()), "{odds}");
+    basin.exchange("below_quantile = 0.3", "below_quantile = 0.9");
+    assert!(basin.run("check scenario.toml").stderr.contains("a number from 0.01 to 0.5"));
+}
+
+/// A colder level is the record without so much of its warming: the ratio is that of two chances, and no cause is claimed.
+#[test]
+fn without_the_warming_so_far() {
+    let basin = with_years_that_differ();
+    basin.exchange("levels_c = [0, 2]", "levels_c = [-0.5, 0, 2]");
+    let summary = study(&basin, "scenario.toml");
+    let low = &summary["findings"]["by_year"]["low_snow"];
+    let [colder, now] = [0, 1].map(|level| number(&low["levels"][level]["chance"]["value"]));
+    let said = sentences(&summary).join("\n");
+    if colder > 0.0 {
+        let ratio = number(&low["without_warming"][0]["chance_ratio"]["value"]);
+        assert!((ratio - now / colder).abs() < 1e-12, "{low}");
+        assert!(said.contains(&format!("low-snow years {ratio:.1} times as often")), "{said}");
+    } else {
+        assert_eq!(low["without_warming"][0]["chance_ratio"], Value::Null);
+        assert!(said.contains("cannot be told"), "{said}");
+    }
+    assert!(!said.contains("caused by"), "{said}");
+}
+
+/// In the cold demo basin precipitation rules the years: words on which share is largest and on low-snow odds are those of the
+/// ranges in the summary, whichever way these fall.
+#[test]
+fn the_cold_demo_speaks_for_its_numbers() {
+    let basin = Basin::new();
+    assert_eq!(basin.run("start demo --quiet").status, 0);
+    let path = "demo/scenarios/frostbell-creek.toml";
+    basin.write(path, &basin.read(path).replace("[realizations]\n", "[realizations]\ncount = 30\n"));
+    let summary = study(&basin, path);
+    let by_year = &summary["findings"]["by_year"];
+    let said = sentences(&summary);
+    let first = &by_year["measures"][0]["partitions"][0];
+    let sides: Vec<Option<bool>> = first["periods"]
+        .as_array()
+        .unwrap()
+        .iter()
+        .map(|period| {
+            let [low, high] = ["q05", "q95"].map(|end| number(&period["level_less_largest_other"][end]));
+            if low > 0.0 {
+                Some(true)
+            } else if high < 0.0 {
+                Some(false)
+            } else {
+                None
+            }
+        })
+        .collect();
+    // The words of +1 °C, from the sides alone: the longest tail of averaging periods in which the warming is the largest.
+    let clear = sides.iter().rev().take_while(|side| **side == Some(true)).count();
+    let from = first["periods"][sides.len() - clear]["years"].as_u64();
+    let words = match (clear, from) {
+        (0, _) if sides.iter().all(|side| *side == Some(false)) => {
+            "in no averaging period up to 30 years".to_owned()
+        }
+        (0, _) => "perhaps (too close to tell)".to_owned(),
+        (_, years) => format!("from {}-year means on", years.unwrap()),
+    };
+    let (_, groups) = said[0].split_once("the warming holds the largest share ").unwrap();
+    let of_one = groups.split(';').next().unwrap();
+    assert!(of_one.starts_with("at +1 °C") && of_one.contains(&words), "{words}: {said:?}");
+    assert_eq!(sides[0], Some(false), "of single years the weather is the largest part: {first}");
+    assert!(first["warming_holds_most"]["warming_holds_most"] != "always");
+    // Two degrees above the reference, or the level next to it, is what the sentence tells.
+    let at_two = &by_year["low_snow"]["levels"][2];
+    let percent = format!("{:.0} %", 100.0 * number(&at_two["chance"]["value"]));
+    assert!(said[1].starts_with("A low-snow year has less than") && said[1].contains(&percent), "{said:?}");
+    let [low, high] = ["q05", "q95"].map(|end| number(&at_two["chance_ratio"][end]));
+    assert_eq!(said[1].contains("no telling"), low <= 1.0 && high >= 1.0, "{said:?}");
+}
