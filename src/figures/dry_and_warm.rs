@@ -43,7 +43,7 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let caption = format!(
         "{} Single years of {}, at each warming level: dry at or below the reference's median precipitation before the date of {}, cool at or below \
          its median temperature of that season; both medians, and what low snow is, stay the reference's. {} Spread is chance between years and \
-         realizations, 5–95 % in their tables, not day-to-day variation.",
+         realizations, Monte Carlo errors in the tables, not day-to-day variation.",
         FIGURE.question,
         ensemble(findings),
         headline.measure.title,

@@ -4,7 +4,7 @@ use super::reader::Reader;
 use crate::season::{BARE_MM, LEAST_PEAK_MM, RAIN_ON_SNOW_MM};
 
 /// Terms and their meanings, in a reader's units.
-pub(super) fn terms(reader: Reader) -> [(&'static str, String); 31] {
+pub(super) fn terms(reader: Reader) -> [(&'static str, String); 37] {
     let water_equivalent = format!("depth of water if the snow were melted, {}", reader.units.depth().word);
     let warming_level = format!(
         "degrees added to the record's temperatures, whose own climate is {}; all levels are compared with the reference",
@@ -25,7 +25,7 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 31] {
          and snowy ground",
         reader.limit(RAIN_ON_SNOW_MM)
     );
-    let terms: [(&'static str, &str); 31] = [
+    let terms: [(&'static str, &str); 37] = [
         ("Snow water equivalent (SWE)", &water_equivalent),
         ("Water year", "starts on the stated day and is named for the calendar year in which it ends"),
         ("Warming level", &warming_level),
@@ -76,6 +76,34 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 31] {
         (
             "Break-even precipitation",
             "change of all precipitation at which the warmed median is back at the reference's",
+        ),
+        (
+            "Response surface",
+            "the median under any warming together with any change of all precipitation, from runs at the nodes of a grid",
+        ),
+        (
+            "Elasticity",
+            "percent of snow water lost for one degree more, or won for one percent more precipitation; together they need not add",
+        ),
+        (
+            "Low-snow year",
+            "less snow water on the survey date than the stated share of the reference's years; the limit stays the reference's at \
+             every level",
+        ),
+        (
+            "Dry and warm snow drought",
+            "snow water within the reference's lowest 30 % of years, with less precipitation than its median (dry), or as much and more \
+             (warm)",
+        ),
+        (
+            "Crossover elevation",
+            "where snow water of single years hangs as much on winter temperature as on precipitation: warmth decides below it, \
+             precipitation above",
+        ),
+        (
+            "Snow line, snow at risk",
+            "lowest elevation with the stated snow water; snow of bands whose winter mean is below freezing now and above it at a \
+             level",
         ),
         ("Melt-out", &melt_out),
         (

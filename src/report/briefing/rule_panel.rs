@@ -70,6 +70,9 @@ fn answers(panel: &RulePanel, measure: &MeasureByRule, told_c: Option<f64>, read
 fn holds(panel: &RulePanel, measure: &MeasureByRule, reader: Reader) -> String {
     let title = &measure.measure.title;
     let listed = |of: &[usize]| -> String {
+        if of.len() > 2 && of.len() == panel.rules.len() {
+            return "every rule".to_owned();
+        }
         let names: Vec<String> = of
             .iter()
             .filter_map(|at| panel.rules.get(*at))

@@ -3,7 +3,7 @@
 use maud::{Markup, html};
 
 /// What was used, and who published it.
-const SOURCES: [(&str, &str); 19] = [
+const SOURCES: [(&str, &str); 24] = [
     ("Degree-days of a day's sine between minimum and maximum", "Baskerville & Emin 1969"),
     ("Rain and snow by a smooth curve, where chosen", "Dai 2008, Geophysical Research Letters 35 L12802"),
     ("Years resampled in runs (stationary bootstrap)", "Politis & Romano 1994"),
@@ -20,6 +20,11 @@ const SOURCES: [(&str, &str); 19] = [
         "Break-even precipitation (roots by ITP)",
         "Oliveira & Takahashi 2021, ACM Transactions on Mathematical Software 47:5",
     ),
+    ("Dry and warm snow drought", "Harpold, Dettinger & Rajagopal 2017, Eos 98"),
+    ("Snow at risk", "Nolin & Daly 2006, Journal of Hydrometeorology 7:1164"),
+    ("Independence of two halves, exact test", "Fisher 1935"),
+    ("Interval of a ratio of two chances", "Katz, Baptista, Azen & Pike 1978, Biometrics 34:469"),
+    ("Temperatures of half snow", "Jennings, Winchell, Livneh & Molotch 2018, Nature Communications 9:1148"),
     ("Outflow centroid", "Stewart, Cayan & Dettinger 2005"),
     ("SWE area, the storage-time integral", "Aragon & Hill 2024, Hydrology and Earth System Sciences 28:781"),
     ("Seasonal snow cover of 60 days", "Hatchett 2021, Hydrology 8:32"),
