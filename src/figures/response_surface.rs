@@ -30,6 +30,8 @@ pub(super) const FIGURE: Figure = Figure {
 const PLOT_PX: f64 = 360.0;
 /// Width of the columns that the field is painted in, px.
 const COLUMN_PX: f64 = 4.0;
+/// How far a block reaches under the next, so that no paper shines through where a page scales the drawing, px.
+const OVERLAP_PX: f64 = 1.0;
 /// Changes of the headline at which the ground changes, percent.
 pub(super) const LIMITS_PCT: [f64; 8] = [-75.0, -50.0, -25.0, -10.0, 10.0, 25.0, 50.0, 100.0];
 /// How many limits a value that is no change reaches.
@@ -147,6 +149,7 @@ fn unit_back(tick: f64, setting: &Setting<'_>) -> f64 {
 
 /// Paints the field column by column.
 fn ground(sheet: &Sheet, plot: &Plot, field: &Field<'_>, [left, right]: [f64; 2]) -> Drawn {
+    let top = plot.at(field.warmings[0], field.changes[field.changes.len() - 1]).1;
     let mut x = left;
     while x < right {
         let end = (x + COLUMN_PX).min(right);
@@ -154,7 +157,8 @@ fn ground(sheet: &Sheet, plot: &Plot, field: &Field<'_>, [left, right]: [f64; 2]
         for part in field.parts(&column, &LIMITS_PCT) {
             let [below, above] = [part.from, part.to].map(|pct| plot.at(field.warmings[0], pct).1);
             let class = part.class as i32 - NO_CHANGE as i32;
-            sheet.block((x, above), (end, below), change_ground(class))?;
+            let over = ((end + OVERLAP_PX).min(right), (above - OVERLAP_PX).max(top));
+            sheet.block((x, over.1), (over.0, below), change_ground(class))?;
         }
         x = end;
     }
