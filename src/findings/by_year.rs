@@ -8,6 +8,7 @@ use super::ranged::RANGE_METHOD;
 use super::resample::{Ranked, Resamples};
 use super::tails::{Tails, tails};
 use super::worst_years::{WorstYear, worst_years};
+use super::year_types::{YearTypes, year_types};
 use crate::basin::Band;
 use crate::ensemble::{BasinSeasons, RecordYear};
 use crate::season::{Kind, Measure};
@@ -58,6 +59,8 @@ pub struct MeasureByYear {
     pub measure: Measure,
     /// Variance by averaging period, one entry a level but the reference; none where nothing varies.
     pub partitions: Vec<Partition>,
+    /// Years by the fifths of the reference, one entry a level.
+    pub types: Vec<YearTypes>,
     /// Low years, high ones and variability, one entry a level.
     pub tails: Vec<Tails>,
     /// The change against the spread; none for a single level.
@@ -117,6 +120,7 @@ impl MeasureByYear {
     ) -> Option<Self> {
         let ByYearQuestions { levels_c, reference, warming_rate, .. } = *asked;
         let all: Vec<Ranked> = years.iter().map(ranked).collect();
+        let types = year_types(&all, levels_c, reference, years[reference].nrows(), resamples)?;
         let tails = tails(&all, levels_c, reference, years[reference].nrows(), resamples)?;
         let others = levels_c.iter().enumerate().filter(|(level, _)| *level != reference);
         let partition = |(level, level_c): (usize, &f64)| {
@@ -125,6 +129,7 @@ impl MeasureByYear {
         Some(Self {
             measure: measure.clone(),
             partitions: others.filter_map(partition).collect(),
+            types,
             tails,
             detection: Detection::of(years, levels_c, reference, warming_rate, resamples),
         })

@@ -52,6 +52,7 @@ mod variance;
 mod warm_year_bias;
 mod worst_years;
 mod yardstick;
+mod year_types;
 
 pub use answer::{BandFindings, Findings, OtherChange, Questions, Runs, answer};
 pub use at_risk::{AtRisk, AtRiskLevel};
@@ -119,3 +120,4 @@ pub use variance::{TwoWay, VarianceShares};
 pub use warm_year_bias::{BiasVerdict, WarmYearBias, warm_year_biases};
 pub use worst_years::{ReturnOfYear, WorstYear};
 pub use yardstick::{TIMES_ASSUMED, Yardstick, YardstickLevel};
+pub use year_types::{TYPE_LIMITS, TYPES, YearTypes};

@@ -7,6 +7,8 @@ use crate::findings::{Crossing, CrossingRange, Findings, LevelFindings, MeasureF
 
 /// A 5-95 % range of fewer pairs is their extremes.
 const LEAST_PAIRS_FOR_A_RANGE: usize = 20;
+/// So many standard errors to either side hold 90 % of a normal distribution.
+const OF_90_PCT: f64 = 1.645;
 
 /// Does warming outweigh the precipitation spread, and from where on?
 pub(super) fn verdict(
@@ -45,6 +47,16 @@ pub(super) fn verdict(
                 let ratio = fixed(ratio.value, 2);
                 format!(": at {} the shift is {ratio} times the half spread", reader.level(up_to_c))
             });
+            // Other realizations would have it cross: that is no answer.
+            let may_cross_c = headline.outweighs_range.and_then(|range| range.q05_c);
+            if let Some(from_c) = may_cross_c {
+                return format!(
+                    "Up to {} these realizations cannot tell whether {cause} outweighs the precipitation spread of the {name}{ratio}; \
+                     others of the same kind might have it outweigh from about {} on.",
+                    reader.level(up_to_c),
+                    reader.between_levels(from_c)
+                );
+            }
             format!(
                 "Up to {}, {cause} does not outweigh the precipitation spread of the {name}, precipitation outweighs the \
                  {cause}{ratio}.",
@@ -92,8 +104,14 @@ pub(super) fn how_much(
     let percent = at.percent_change.map_or(String::new(), |percent| format!(" ({} %)", signed(percent, 0)));
     let ratio = at.signal_to_spread.map_or(String::new(), |ratio| {
         let error = ratio.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
-        let word = if ratio.value > 1.0 { "outweighs" } else { "does not outweigh" };
-        format!("; that is {}{error} times the half spread, so it {word} it", fixed(ratio.value, 2))
+        let straddles =
+            ratio.monte_carlo_error.is_some_and(|error| (ratio.value - 1.0).abs() < OF_90_PCT * error);
+        let so = match (straddles, ratio.value > 1.0) {
+            (true, _) => "so near 1 that these realizations cannot tell whether it outweighs it",
+            (false, true) => "so it outweighs it",
+            (false, false) => "so it does not outweigh it",
+        };
+        format!("; that is {}{error} times the half spread, {so}", fixed(ratio.value, 2))
     });
     let range = if shift.pairs >= LEAST_PAIRS_FOR_A_RANGE {
         format!(", 90 % of them between {}", reader.change_and_change(shift.q05, shift.q95))

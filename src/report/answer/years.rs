@@ -20,6 +20,7 @@ pub(super) fn years(findings: &Findings, reader: Reader) -> Vec<String> {
     said.extend(by_year.worst_years.first().and_then(|worst| worst_year(worst, by_year, findings, reader)));
     said.extend(by_year.low_runs.as_ref().and_then(|runs| low_runs(runs, findings, reader)));
     said.extend(headline.and_then(|of| tails(of, findings, reader)));
+    said.extend(by_year.measures.last().and_then(|of| types(of, findings, reader)));
     said.extend(headline.and_then(|of| detection(of, reader)));
     said
 }
@@ -147,6 +148,24 @@ fn low_runs(runs: &LowRuns, findings: &Findings, reader: Reader) -> Option<Strin
             listed(&firsts)
         )
     })
+}
+
+/// How many years are of the driest and of the wettest fifth, and what a limit that kept the driest a fifth would mean.
+fn types(of: &MeasureByYear, findings: &Findings, reader: Reader) -> Option<String> {
+    let reference = of.types.get(findings.reference)?;
+    let at = of.types.get(telling_level(findings)?)?;
+    let (own, kept) = (reference.kept_limits.first()?, at.kept_limits.first()?);
+    let [driest, wettest] = [at.shares.first()?, at.shares.last()?];
+    Some(format!(
+        "By {}: at {} {} fall into what is the driest fifth at the reference, and {} into the wettest; to keep a fifth of the \
+         years in the driest type its limit would go from {} to {}.",
+        of.measure.title,
+        reader.level(at.level_c),
+        in_years(driest.value),
+        in_years(wettest.value),
+        reader.amount(own.value),
+        reader.amount(kept.value)
+    ))
 }
 
 fn tails(of: &MeasureByYear, findings: &Findings, reader: Reader) -> Option<String> {

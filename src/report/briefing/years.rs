@@ -8,7 +8,7 @@ use super::{Figures, levels};
 use crate::figures::Part;
 use crate::findings::{
     ByYear, Crossing, Detection, Findings, HoldsMost, LowRuns, LowSnow, MeasureByYear, Partition, Ranged,
-    Tails,
+    TYPES, Tails,
 };
 use maud::{Markup, html};
 
@@ -29,6 +29,10 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer, figures: &Figures<'_>)
         details {
             summary { "Low years, high years and variability" }
             @for measure in &found.measures { (tails(findings, measure, reader)) }
+        }
+        details {
+            summary { "Types of years, by fixed limits and by limits that move" }
+            @for measure in &found.measures { (types(findings, measure, reader)) }
         }
         p {
             "Ranges are 5–95 % over 400 resamples of whole realizations; of a count of nothing, or of all, they say nothing, and the bound \
@@ -198,6 +202,31 @@ fn detected(detection: &Detection, reader: Reader) -> Markup {
             }
         } } }
     } } } }
+}
+
+/// Names of the fifths, from the driest.
+const FIFTHS: [&str; TYPES] = ["Driest fifth", "Second", "Middle", "Fourth", "Wettest fifth"];
+
+fn types(findings: &Findings, measure: &MeasureByYear, reader: Reader) -> Markup {
+    let depth = reader.units.depth().word;
+    html! { div.scroll { table {
+        caption {
+            (crate::figures::sentence(&measure.measure.title)) ", single years: share in each fifth of the reference with its 5–95 % range, and below it \
+             the upper limit (" (depth) ") that would keep the type a fifth of the level's own years. A type that keeps its name by a \
+             lower limit holds less water."
+        }
+        (heading(findings, "Type at the reference", reader))
+        tbody { @for (at, name) in FIFTHS.iter().enumerate() { tr {
+            th scope="row" { (name) }
+            @for level in &measure.types { td {
+                @match bound(level.shares[at].value, level.bounds[at]) {
+                    Some(words) => { (words) }
+                    None => { (share(level.shares[at])) }
+                }
+                @if let Some(limit) = level.kept_limits.get(at) { br; "up to " (reader.amount_bare(limit.value)) }
+            } }
+        } } }
+    } } }
 }
 
 fn tails(findings: &Findings, measure: &MeasureByYear, reader: Reader) -> Markup {

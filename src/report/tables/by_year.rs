@@ -1,7 +1,7 @@
 //! What single years say: a table each for variance by averaging period, low-snow odds, worst years, runs, tails, detection.
 
 use super::cells::{Told, finish, name, optional, outweighs, write};
-use crate::findings::{ByYear, HoldsMost, Ranged};
+use crate::findings::{ByYear, HoldsMost, Ranged, TYPES, YearTypes};
 use crate::units::UnitSystem;
 use csv::Writer;
 
@@ -10,6 +10,7 @@ pub(super) fn by_year(found: &ByYear, units: UnitSystem) -> Vec<(&'static str, V
     let mut tables = vec![
         ("variance-by-averaging-period", partitions(found, units)),
         ("tails", tails(found, units)),
+        ("year-types", year_types(found, units)),
         ("change-against-spread", detection(found, units)),
     ];
     if found.low_snow.is_some() {
@@ -85,6 +86,35 @@ fn partitions(found: &ByYear, units: UnitSystem) -> Vec<u8> {
             }
         }
     }
+    table(header, rows)
+}
+
+/// One row a measure, level and type, from the driest; the upper limits of a type are empty for the wettest.
+fn year_types(found: &ByYear, units: UnitSystem) -> Vec<u8> {
+    let warming = units.warming();
+    let depth = units.depth().suffix;
+    let mut header =
+        vec!["measure".to_owned(), format!("level_{}", warming.suffix), "fifth_of_the_reference".to_owned()];
+    header.push(format!("upper_limit_{depth}"));
+    header.extend(columns("share"));
+    header.push("share_bound".to_owned());
+    header.extend(columns(&format!("upper_limit_that_keeps_the_share_{depth}")));
+    let rows = found.measures.iter().flat_map(|measure| {
+        let told = Told { units, kind: measure.measure.kind };
+        let own = measure.types.iter().find(|level| level.is_reference);
+        measure.types.iter().flat_map(move |level| {
+            (0..TYPES).map(move |at| {
+                let limit = |of: Option<&YearTypes>| of.and_then(|of| of.kept_limits.get(at)).copied();
+                let mut row = vec![name(&measure.measure, units), warming.of(level.level_c).to_string()];
+                row.push((at + 1).to_string());
+                row.push(optional(limit(own).map(|limit| told.in_units(limit.value))));
+                row.extend(ranged(Some(level.shares[at])));
+                row.push(optional(level.bounds[at]));
+                row.extend(in_units(limit(Some(level)), |value| told.in_units(value)));
+                row
+            })
+        })
+    });
     table(header, rows)
 }
 
