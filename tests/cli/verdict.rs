@@ -242,3 +242,37 @@ fn a_stated_change_of_precipitation_is_named_with_the_warming() {
     let words = "warming with its stated change of precipitation";
     assert!(stated.contains(words) && !plain.contains(words), "{plain} {stated}");
 }
+
+/// A level just below the one from which on warming outweighs is one of which so few realizations cannot tell: words and range
+/// say so together, of the verdict and of the level itself.
+#[test]
+fn a_level_too_near_to_call_is_not_called() {
+    let basin = Basin::new();
+    assert_eq!(basin.run("start demo --quiet").status, 0);
+    let path = "demo/scenarios/alder-fork.toml";
+    let few = "[realizations]\ncount = 40\nyears = 10\n";
+    let scenario = basin.read(path).replace("[realizations]\n", few);
+    basin.write(path, &scenario);
+    let (found, _) = study(&basin, path);
+    let headline = &found["findings"]["basin"][0];
+    let from_c = headline["outweighs"]["level_c"].as_f64().unwrap();
+    assert!(headline["outweighs_range"]["q05_c"].as_f64().unwrap() < 0.99 * from_c, "{headline}");
+    basin.write(
+        path,
+        &scenario.replace("levels_c = [0, 1, 2, 3, 4]", &format!("levels_c = [0, {}]", 0.99 * from_c)),
+    );
+    let (near, _) = study(&basin, path);
+    let headline = &near["findings"]["basin"][0];
+    assert_eq!(headline["outweighs"]["crossing"], "not_reached");
+    let verdict = near["answer"]["verdict"].as_str().unwrap();
+    assert!(verdict.contains("these realizations cannot tell whether warming outweighs"), "{verdict}");
+    assert!(verdict.contains("might have it outweigh from about +"), "{verdict}");
+    let ratio = &headline["levels"][1]["signal_to_spread"];
+    let [value, error] = ["value", "monte_carlo_error"].map(|name| ratio[name].as_f64().unwrap());
+    assert!((value - 1.0).abs() < 1.645 * error, "{ratio}");
+    let amount = near["answer"]["amounts"][0].as_str().unwrap();
+    assert!(
+        amount.contains("so near 1 that these realizations cannot tell whether it outweighs it"),
+        "{amount}"
+    );
+}
