@@ -52,14 +52,16 @@ impl AtRisk {
         let levels = warmer.map(|(level_c, then_c)| {
             let is_at_risk = |band: &usize| now_c[*band] <= 0.0 && then_c[*band] > 0.0;
             let at_risk: Vec<usize> = (0..bands.len()).filter(is_at_risk).collect();
-            let of = |realization: usize| at_risk.iter().map(|band| volume(*band, realization)).sum::<f64>();
+            // A sum of nothing is -0 in floating point.
+            let of =
+                |realization: usize| at_risk.iter().map(|band| volume(*band, realization)).sum::<f64>() + 0.0;
             let share = |realization: usize| {
                 let all: f64 = (0..bands.len()).map(|band| volume(band, realization)).sum();
                 (all > 0.0).then(|| of(realization) / all)
             };
             let shares: Option<Vec<f64>> = (0..realizations).map(share).collect();
             let volumes = sorted((0..realizations).map(of));
-            let area_km2: f64 = at_risk.iter().map(|band| bands[*band].area_km2).sum();
+            let area_km2 = at_risk.iter().map(|band| bands[*band].area_km2).sum::<f64>() + 0.0;
             AtRiskLevel {
                 level_c: *level_c,
                 area_km2,

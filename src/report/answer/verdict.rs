@@ -58,8 +58,7 @@ pub(super) fn verdict(
                 );
             }
             format!(
-                "Up to {}, {cause} does not outweigh the precipitation spread of the {name}, precipitation outweighs the \
-                 {cause}{ratio}.",
+                "Up to {}, {cause} does not outweigh the precipitation spread of the {name}{ratio}.",
                 reader.level(up_to_c)
             )
         }

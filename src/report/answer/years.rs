@@ -111,12 +111,16 @@ fn worst_year(worst: &WorstYear, by_year: &ByYear, findings: &Findings, reader: 
     let [reference, at] = [findings.reference, telling_level(findings)?].map(|level| worst.levels.get(level));
     let said = |of: Option<&crate::findings::ReturnOfYear>| -> Option<String> {
         Some(match of?.return_period_years {
-            Some(period) => format!("one year in {}{}", years_of(period.value), range(period, 1.0, 0, "")),
+            Some(period) => format!(
+                "one year in {}{}",
+                years_of(period.value),
+                range(period, 1.0, usize::from(period.value < 9.95), "")
+            ),
             None => format!("rarer than one in {simulated} simulated years"),
         })
     };
     Some(format!(
-        "As little as in {}, the record's lowest year ({}), comes {} at the reference, {} at {}.",
+        "As little as in {}, the record's lowest year in this model ({}), comes {} at the reference, {} at {}.",
         worst.water_year,
         reader.amount(worst.swe_mm),
         said(reference)?,

@@ -38,7 +38,7 @@ pub(super) fn elevations(study: &Study<'_>) -> Markup {
         @if let Some(words) = last(places) { p { (words) } }
         p { (snow_line(&places.snow_line, findings, reader)) }
         @if let Some(at) = places.at_risk.as_ref().and_then(|found| found.levels.last()) { p { (at_risk(at, reader)) } }
-        @for at in &places.crossover { @if at.level_c == findings.levels_c[findings.reference] { p { (crossover(at, reader)) } } }
+        @for sentence in crossovers(places, findings, reader) { p { (sentence) } }
     } }
 }
 
@@ -101,14 +101,15 @@ fn depends(found: &Coincidence, findings: &Findings) -> String {
     let error = factor.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
     let factor = fixed(factor.value, 2);
     let verdict = match own.depends {
-        Depends::MoreOften => "dry years of this weather are warm more often than by chance",
-        Depends::LessOften => "dry years of this weather are warm less often than by chance",
+        Depends::MoreOften => "in the weather that was made, dry years tend to be warm",
+        Depends::LessOften => "in the weather that was made, dry years tend to be cool",
         Depends::CannotTell => {
             "these realizations cannot tell whether dry years are warm more or less often than by chance"
         }
     };
     format!(
-        "About the reference's own medians, dry and warm years come {factor}{error} times as often as if the two knew nothing of each other: {verdict}."
+        "About the reference's own medians, dry and warm years come {factor}{error} times as often as if the two knew nothing of each other: {verdict}. It was made from the record, and whether \
+         the climate itself has such a tie only the record can say."
     )
 }
 
@@ -217,6 +218,13 @@ fn snow_line(found: &SnowLine, findings: &Findings, reader: Reader) -> String {
     let [Some(now), Some(then)] = [found.levels.get(findings.reference), found.levels.last()] else {
         return String::new();
     };
+    let then_c = then.level_c;
+    let both = |now: Line, then: Line| match (now, then) {
+        (Line::BelowLowestBand, Line::BelowLowestBand) | (Line::AboveHighestBand, Line::AboveHighestBand) => {
+            format!("{} at both", at(now))
+        }
+        _ => format!("{} at the reference and {} at {}", at(now), at(then), reader.level(then_c)),
+    };
     let rise = |m_per_c: Option<f64>| {
         m_per_c.map_or(String::new(), |rise| format!(", higher by {}", reader.elevation_per_degree(rise)))
     };
@@ -229,14 +237,12 @@ fn snow_line(found: &SnowLine, findings: &Findings, reader: Reader) -> String {
         );
     }
     format!(
-        "The snow line, where {} lie, is {} at the reference and {} at {}{}; winter's mean is at freezing {} and then {}{}.",
+        "From the reference to {}: the snow line, where {} lie, is {}{}; winter's mean is at freezing {}{}.",
+        reader.level(then_c),
         reader.limit(found.swe_mm),
-        at(now.snow_line),
-        at(then.snow_line),
-        reader.level(then.level_c),
+        both(now.snow_line, then.snow_line),
         rise(then.snow_line_rise_m_per_c),
-        at(now.freezing),
-        at(then.freezing),
+        both(now.freezing, then.freezing),
         rise(then.freezing_rise_m_per_c)
     )
 }
@@ -261,22 +267,36 @@ fn at_risk(found: &AtRiskLevel, reader: Reader) -> String {
     )
 }
 
+/// Of the reference, and of each level from which on the answer is another.
+fn crossovers(places: &Places, findings: &Findings, reader: Reader) -> Vec<String> {
+    let mut before = None;
+    let mut said = Vec::new();
+    for at in places.crossover.iter().skip(findings.reference) {
+        let kind = std::mem::discriminant(&at.found);
+        if before != Some(kind) {
+            said.push(format!("At {}: {}", reader.level(at.level_c), crossover(at, reader)));
+        }
+        before = Some(kind);
+    }
+    said
+}
+
 fn crossover(found: &Crossover, reader: Reader) -> String {
     let resampled = found.range.map_or(String::new(), |range| {
         format!(" {} % of resampled realizations say the same.", fixed(100.0 * range.share_alike, 0))
     });
     let words = match found.found {
         Dominates::Crossover { elevation_m } => format!(
-            "Up to {} a year's snow goes more with the cool season's temperature, above with its precipitation.",
+            "up to {} a year's snow goes more with the cool season's temperature, above with its precipitation.",
             reader.elevation(elevation_m)
         ),
         Dominates::Reversed { elevation_m } => format!(
-            "Up to {} a year's snow goes more with the cool season's precipitation, above with its temperature.",
+            "up to {} a year's snow goes more with the cool season's precipitation, above with its temperature.",
             reader.elevation(elevation_m)
         ),
-        Dominates::Temperature => "At every elevation with snow enough, a year's snow goes more with the cool season's temperature than with its precipitation.".to_owned(),
-        Dominates::Precipitation => "At every elevation with snow enough, a year's snow goes more with the cool season's precipitation than with its temperature.".to_owned(),
-        Dominates::Unknown => return "Whether temperature or precipitation decides a year's snow cannot be told at any elevation.".to_owned(),
+        Dominates::Temperature => "at every elevation with snow enough, a year's snow goes more with the cool season's temperature than with its precipitation.".to_owned(),
+        Dominates::Precipitation => "at every elevation with snow enough, a year's snow goes more with the cool season's precipitation than with its temperature.".to_owned(),
+        Dominates::Unknown => return "whether temperature or precipitation decides a year's snow cannot be told at any elevation.".to_owned(),
     };
     words + &resampled
 }
