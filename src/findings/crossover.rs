@@ -35,6 +35,9 @@ pub struct BandCorrelation {
     pub precipitation: Option<f64>,
 }
 
+/// A band whose years differ by less has no correlation, mm of standard deviation.
+const LEAST_DEVIATION_MM: f64 = 0.1;
+
 /// Which of the two is correlated more strongly with the snow, whatever its sign.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 #[serde(rename_all = "snake_case", tag = "dominates")]
@@ -152,6 +155,8 @@ fn correlation(elevation_m: f64, sums: &[Sums], weight: &dyn Fn(usize) -> f64) -
     }
     let [n, s, t, p, ss, tt, pp, st, sp] = all;
     let with = |x: f64, xx: f64, sx: f64| {
+        // Where hardly a year has snow left, there is nothing to decide.
+        ((ss - s * s / n) / n > LEAST_DEVIATION_MM * LEAST_DEVIATION_MM).then_some(())?;
         let of_both = (ss - s * s / n) * (xx - x * x / n);
         let r = (sx - s * x / n) / of_both.sqrt();
         r.is_finite().then(|| r.clamp(-1.0, 1.0))
@@ -160,13 +165,11 @@ fn correlation(elevation_m: f64, sums: &[Sums], weight: &dyn Fn(usize) -> f64) -
 }
 
 impl Dominates {
-    /// The lowest crossing of the two, scanning up.
+    /// The lowest crossing of the two, scanning up over the bands whose snow still varies.
     fn of(elevations: &[BandCorrelation]) -> Self {
         let excess =
             |at: &BandCorrelation| Some((at.elevation_m, at.precipitation?.abs() - at.temperature?.abs()));
-        let Some(excesses) = elevations.iter().map(excess).collect::<Option<Vec<_>>>() else {
-            return Self::Unknown;
-        };
+        let excesses: Vec<(f64, f64)> = elevations.iter().filter_map(excess).collect();
         let Some((_, lowest)) = excesses.first().copied() else { return Self::Unknown };
         let is_reversed = lowest >= 0.0;
         let sign = if is_reversed { -1.0 } else { 1.0 };
@@ -249,6 +252,7 @@ mod tests {
         assert_eq!(at(&[[1.0, 3.0], [1.0, 4.0]]).found, Dominates::Precipitation);
         assert_eq!(at(&[]).found, Dominates::Unknown);
         assert_eq!(at(&[[0.0, 0.0]]).found, Dominates::Unknown, "snow that does not vary");
+        assert_eq!(at(&[[0.0, 0.0], [4.0, 3.0]]).found, Dominates::Temperature, "bare bands decide nothing");
         let Dominates::Reversed { elevation_m } = at(&[[3.0, 4.0], [4.0, 3.0]]).found else {
             panic!("not reversed")
         };

@@ -7,9 +7,6 @@ use super::quantile::{quantile, sorted};
 use crate::baseline::wilson;
 use serde::Serialize;
 
-/// Shares of fewer years than this say nothing of a period.
-const LEAST_YEARS_OF_A_PERIOD: usize = 5;
-
 /// The record's years in use, dry or cool where at or below the medians of these years.
 #[derive(Debug, Clone, PartialEq, Serialize)]
 pub struct RecordCoincidence {
@@ -103,7 +100,6 @@ impl RecordCoincidence {
         };
         let period = |years: &[RecordValues]| {
             let of = cells(years);
-            (years.len() >= LEAST_YEARS_OF_A_PERIOD).then_some(())?;
             Some(PeriodCoincidence {
                 first_year: years.first()?.0,
                 last_year: years.last()?.0,

@@ -8,7 +8,7 @@ use super::Figures;
 use crate::figures::Part;
 use crate::findings::{
     AtRiskLevel, BandChangeLevel, Chance, Coincidence, Counted, Crossover, Depends, Dominates, Findings,
-    Line, Places, RecordCoincidence, Sign, SnowDroughts, SnowLine,
+    Line, PeriodsCompared, Places, RecordCoincidence, Sign, SnowDroughts, SnowLine,
 };
 use maud::{Markup, html};
 
@@ -41,6 +41,11 @@ pub(super) fn elevations(study: &Study<'_>) -> Markup {
         @for sentence in crossovers(places, findings, reader) { p { (sentence) } }
     } }
 }
+
+/// An answer that fewer resampled realizations share is not firm.
+const FIRM_SHARE: f64 = 0.9;
+/// Shares of fewer years than this say nothing of a period.
+const LEAST_YEARS_OF_A_PERIOD: u64 = 5;
 
 /// `about 3 in 10 years`.
 fn in_ten(share: f64) -> String {
@@ -131,7 +136,10 @@ fn of_record(found: &RecordCoincidence) -> String {
         counted(found.low_snow_given_dry_warm),
         counted(found.low_snow_given_dry_cool)
     );
-    if let Some(periods) = found.periods {
+    let is_told = |periods: &PeriodsCompared| {
+        [periods.earlier, periods.later].iter().all(|period| period.dry_warm.of >= LEAST_YEARS_OF_A_PERIOD)
+    };
+    if let Some(periods) = found.periods.filter(is_told) {
         let verdict = if periods.are_apart {
             "the intervals lie apart"
         } else {
@@ -283,7 +291,8 @@ fn crossovers(places: &Places, findings: &Findings, reader: Reader) -> Vec<Strin
 
 fn crossover(found: &Crossover, reader: Reader) -> String {
     let resampled = found.range.map_or(String::new(), |range| {
-        format!(" {} % of resampled realizations say the same.", fixed(100.0 * range.share_alike, 0))
+        let firm = if range.share_alike < FIRM_SHARE { ", which is no firm answer" } else { "" };
+        format!(" {} % of resampled realizations say the same{firm}.", fixed(100.0 * range.share_alike, 0))
     });
     let words = match found.found {
         Dominates::Crossover { elevation_m } => format!(
