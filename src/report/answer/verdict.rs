@@ -58,7 +58,8 @@ pub(super) fn verdict(
                 );
             }
             format!(
-                "Up to {}, {cause} does not outweigh the precipitation spread of the {name}{ratio}.",
+                "Up to {}, {cause} does not outweigh the precipitation spread of the {name}; precipitation outweighs the \
+                 {cause}{ratio}.",
                 reader.level(up_to_c)
             )
         }
