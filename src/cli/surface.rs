@@ -39,12 +39,20 @@ pub(super) fn warmed(
     let survey = scenario.season.survey_dates[0];
     let wetness = Wetness::of(&ready.drawn_from, &generator, [all as usize, plan.years], survey, watch)?;
 
+    // Where the study's levels change nothing but temperatures, they are warmings of the surface.
+    let is_plain = |level_c: &f64| {
+        let warming = &scenario.warming.warming;
+        let factor = warming.precipitation.factor(*level_c);
+        warming.wet_day_intensity_pct_per_c.is_none() && factor.iter().all(|factor| *factor == 1.0)
+    };
+    let levels_are_plain = levels_c.iter().all(is_plain);
     let reference_c = levels_c[scenario.warming.reference];
     let questions = SurfaceQuestions {
         warmings_c: with(&typed.warmings_c, reference_c),
         precipitation_changes_pct: with(&typed.precipitation_changes_pct, 0.0),
         levels_c,
         reference_c,
+        levels_warm_alone: levels_are_plain,
         named: &ready.named_changes,
         criteria: &scenario.findings.criteria(ready.basin.area_km2()),
         bands: &ready.basin.bands,
@@ -53,13 +61,6 @@ pub(super) fn warmed(
     let nodes = run(ready, &plan, questions.changes(), &kept, watch)?;
     let at = |warming_c: f64, pct: f64| nodes.median(Change { warming_c, precipitation_change_pct: pct });
 
-    // Where the study's levels change nothing but temperatures, they are warmings of the surface.
-    let is_plain = |level_c: &f64| {
-        let warming = &scenario.warming.warming;
-        let factor = warming.precipitation.factor(*level_c);
-        warming.wet_day_intensity_pct_per_c.is_none() && factor.iter().all(|factor| *factor == 1.0)
-    };
-    let levels_are_plain = levels_c.iter().all(is_plain);
     let known = |level: usize, pct: f64| levels_are_plain.then(|| at(levels_c[level], pct)).flatten();
     let break_even = break_even(ready, &plan, groups, &kept, (&wetness, known), watch)?;
     let found_before = |warming_c: f64| {

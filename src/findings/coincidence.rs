@@ -109,7 +109,17 @@ impl Coincidence {
                     Cells::place(precipitation_mm <= median_precipitation_mm, mean_c <= median_temperature_c);
                 Some(cell + 4 * usize::from(swe_mm < low_snow_below_mm))
             });
-            level_of(*level_c, &counts, own_medians(&at.counted(about(at.medians())), resamples), resamples)
+            let mut level = level_of(
+                *level_c,
+                &counts,
+                own_medians(&at.counted(about(at.medians())), resamples),
+                resamples,
+            );
+            // Of years that are mostly bare no share is low.
+            if low_snow_below_mm <= 0.0 {
+                level.low_snow_given_dry = LowSnowGivenDry { warm: None, cool: None, ratio: None };
+            }
+            level
         });
         Some(Self {
             median_precipitation_mm,

@@ -33,9 +33,12 @@ impl<const K: usize> Counts<K> {
         Some(Estimate::new(of(self.all())?, resampled))
     }
 
-    /// The same of a chance.
+    /// The same of a chance. Where none is seen, or all, its bound is that of the realizations which have it at all: those with
+    /// years of its condition.
     pub fn chance(&self, of: impl Fn([u64; K]) -> Option<f64>, resamples: &Resamples) -> Option<Chance> {
-        Some(Chance::new(self.estimate(of, resamples)?, self.0.len()))
+        let has_it = |one: &&[u32; K]| of(one.map(u64::from)).is_some();
+        let realizations = self.0.iter().filter(has_it).count();
+        Some(Chance::new(self.estimate(of, resamples)?, realizations))
     }
 }
 

@@ -42,6 +42,25 @@ pub struct Slope {
     pub per_percent_pct: Option<Estimate>,
 }
 
+/// The percentage that, taken so many times over, comes to `found`: of a degree, what a degree of another scale does, since a
+/// slope is a share that compounds. The error goes with the derivative.
+///
+/// ```
+/// use thawline::findings::{Estimate, compound_share_pct};
+/// let per_celsius = Estimate { value: -19.0, monte_carlo_error: Some(1.0) };
+/// let half = compound_share_pct(per_celsius, 2.0);
+/// assert!((half.value + 10.0).abs() < 1e-12, "0.9 * 0.9 = 0.81");
+/// assert!((half.monte_carlo_error.unwrap() - 0.5 / 0.9).abs() < 1e-12);
+/// ```
+pub fn compound_share_pct(found: Estimate, times: f64) -> Estimate {
+    let left = libm::pow(1.0 + found.value / 100.0, 1.0 / times);
+    let slope = left / (1.0 + found.value / 100.0) / times;
+    Estimate {
+        value: 100.0 * (left - 1.0),
+        monte_carlo_error: found.monte_carlo_error.map(|error| error * slope),
+    }
+}
+
 impl Slopes {
     /// The changes that have to be run for the slopes at a level, the level itself and those of the interaction with it.
     pub(super) fn changes(level_c: f64, reference_c: f64) -> [Change; 7] {

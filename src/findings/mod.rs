@@ -69,7 +69,7 @@ pub use crossover::{BandCorrelation, Crossover, CrossoverRange, Dominates};
 pub use detection::{Detection, DetectionLevel, DetectionPeriod, WarmingRate};
 pub use distribution::{DOTS, Distribution};
 pub use driest_and_wettest::{DriestAndWettest, OverRealizations};
-pub use elasticity::{HALF_STEP_C, HALF_STEP_PCT, INTERACTION_PCT, Slope, Slopes};
+pub use elasticity::{HALF_STEP_C, HALF_STEP_PCT, INTERACTION_PCT, Slope, Slopes, compound_share_pct};
 pub use elevations::{Line, LineRange};
 pub use exceedance::{EXCEEDANCE_PCT, Exceeded};
 pub use generator_sheet::{

@@ -52,7 +52,9 @@ impl SnowDroughts {
         let at = values.at(reference);
         let low_at_mm = quantile(&sorted(at.years().map(|[swe_mm, ..]| swe_mm)), DROUGHT_QUANTILE);
         let median_precipitation_mm = quantile(&sorted(at.years().map(|[_, mm, _]| mm)), 0.5);
-        if !low_at_mm.is_finite() || !median_precipitation_mm.is_finite() {
+        // Of years that are mostly bare no share is low.
+        let has_snow = low_at_mm.is_finite() && low_at_mm > 0.0;
+        if !has_snow || !median_precipitation_mm.is_finite() {
             return None;
         }
         let levels = levels_c.iter().enumerate().map(|(level, level_c)| {

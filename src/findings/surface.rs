@@ -57,6 +57,8 @@ pub struct SurfaceQuestions<'a> {
     pub levels_c: &'a [f64],
     /// The reference, degC.
     pub reference_c: f64,
+    /// Whether the study's levels change temperatures alone.
+    pub levels_warm_alone: bool,
     /// Changes beside the grid.
     pub named: &'a [NamedChange],
     /// What the user wants to hold.
@@ -72,6 +74,8 @@ pub struct SurfaceQuestions<'a> {
 pub struct ResponseSurface {
     /// Realizations that were run, the study's first; no change of mean precipitation is assumed in them.
     pub realizations: usize,
+    /// Whether the study's levels change temperatures alone, so that they are warmings of the surface.
+    pub levels_warm_alone: bool,
     /// Warmings of the grid, degC.
     pub warmings_c: Vec<f64>,
     /// Precipitation changes of the grid, percent.
@@ -197,6 +201,7 @@ impl SurfaceQuestions<'_> {
         let reference = Change { warming_c: self.reference_c, precipitation_change_pct: 0.0 };
         ResponseSurface {
             realizations: nodes.runs.periods.len_of(Axis(2)),
+            levels_warm_alone: self.levels_warm_alone,
             warmings_c: self.warmings_c.clone(),
             precipitation_changes_pct: self.precipitation_changes_pct.clone(),
             reference_median_mm: nodes.median(reference).unwrap_or(f64::NAN),

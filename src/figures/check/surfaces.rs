@@ -47,6 +47,7 @@ pub fn made(measure: &Measure, [middle, change]: [f64; 2], reference_c: f64) -> 
     let named = |name: &str, origin, change| NamedNode { name: name.to_owned(), origin, node: node(change) };
     ResponseSurface {
         realizations: 60,
+        levels_warm_alone: true,
         reference_median_mm: middle,
         measures: vec![measure.clone()],
         nodes: grid.iter().copied().map(node).collect(),

@@ -26,7 +26,8 @@ impl Words {
         let distance = |point: &&CurvePoint| (point.warming_c - reference_c - 2.0).abs();
         let telling = warmer.min_by(|a, b| distance(a).total_cmp(&distance(b)));
         let told = |point: &CurvePoint| {
-            let at = level(units, point.warming_c);
+            let alone = if surface.levels_warm_alone { "" } else { " alone, without the stated changes," };
+            let at = format!("{}{alone}", level(units, point.warming_c));
             let [_, most] = BREAK_EVEN_BRACKET_PCT;
             match (point.precipitation_change_pct, point.stays) {
                 (Some(pct), _) if pct > 0.0 => {
@@ -70,7 +71,7 @@ impl Words {
                 "How much {measure} would be left under any warming together with any change of precipitation? Change of the \
                  median {}-year mean from the reference; lines at {limits}. All precipitation is changed by the same percentage, \
                  also where the study states a change with its levels, and wet days come as often as in the record. {} of the \
-                 study, without an assumed change of mean precipitation; Monte Carlo errors in the table. Spread \
+                 study, without an assumed change of mean precipitation; Monte Carlo errors in the table. Lines of criteria ask the same realizations. Spread \
                  between realizations is chance and is not drawn but for the dots.",
                 findings.years,
                 counted(surface.realizations, "realization")

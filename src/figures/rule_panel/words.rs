@@ -119,9 +119,11 @@ fn title(
         measure.levels.iter().flat_map(|level| level.against.iter().copied()).collect();
     against.sort_unstable();
     against.dedup();
+    let is_open = measure.levels.iter().any(|level| !level.cannot_tell.is_empty());
+    let near = if is_open { ", some levels too near to call" } else { "" };
     let verdict = match (rules, against.len()) {
         (0, _) => "no other rule could be tuned".to_owned(),
-        (_, 0) => format!("none of {} turns the verdict", counted(rules, "other rule")),
+        (_, 0) => format!("none of {} turns the verdict{near}", counted(rules, "other rule")),
         (_, turned) => format!(
             "{turned} of {} {} the verdict at a level",
             counted(rules, "other rule"),

@@ -111,7 +111,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
         slopes: slopes::slopes(findings, reader),
         cases: slopes::cases(findings, reader),
         tipping: tipping::tipping(findings, reader),
-        years: years::years(findings, reader),
+        years: years::years(findings, cause(findings, warming), reader),
         chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
     };
     answer.at_a_glance = at_a_glance(findings, headline, &answer, reader);

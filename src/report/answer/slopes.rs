@@ -3,7 +3,7 @@
 use super::super::numbers::{fixed, precision, signed};
 use super::super::reader::Reader;
 use super::telling_level;
-use crate::findings::{Estimate, Findings, INTERACTION_PCT, NamedNode, Slope, Slopes};
+use crate::findings::{Estimate, Findings, INTERACTION_PCT, NamedNode, Slope, Slopes, compound_share_pct};
 use crate::season::MELT_OUT_DAY;
 
 /// `12.2 ± 0.25 %`: the size of a percentage with its error.
@@ -14,11 +14,7 @@ pub(in super::super) fn percent(found: Estimate) -> String {
 
 /// The same per degree of the reader's.
 pub(in super::super) fn per_degree(found: Estimate, reader: Reader) -> Estimate {
-    let degree = reader.units.warming().of(1.0);
-    Estimate {
-        value: found.value / degree,
-        monte_carlo_error: found.monte_carlo_error.map(|error| error / degree),
-    }
+    compound_share_pct(found, reader.units.warming().of(1.0))
 }
 
 /// Sentences on the slopes at the reference and at a telling level, by band, and on the interaction.

@@ -1,6 +1,6 @@
 //! From which warming on something fails that the user wants to hold.
 
-use super::super::numbers::fixed;
+use super::super::numbers::{fixed, trimmed};
 use super::super::reader::Reader;
 use super::verdict::crossing_range;
 use crate::findings::{Asks, Crossing, Findings, TippingLevel};
@@ -20,7 +20,7 @@ fn one(findings: &Findings, of: &TippingLevel, reader: Reader) -> String {
             format!("{title} of at least {} in half of the years", reader.amount(swe_mm))
         }
         Asks::LowSnowYearsAtMost { share } => {
-            format!("low-snow years at most {} in 10", fixed(10.0 * share, usize::from(share < 0.1)))
+            format!("low-snow years at most {} % of all", trimmed(&fixed(100.0 * share, 1)))
         }
     };
     let name = &of.criterion.name;

@@ -8,13 +8,15 @@ use crate::findings::{
 };
 
 /// The sentences; none where single years say nothing.
-pub(super) fn years(findings: &Findings, reader: Reader) -> Vec<String> {
+pub(super) fn years(findings: &Findings, cause: &str, reader: Reader) -> Vec<String> {
     let Some(by_year) = &findings.by_year else {
         return Vec::new();
     };
     let headline = by_year.measures.first();
     let mut said: Vec<String> = Vec::new();
-    said.extend(headline.map(|of| of.partitions.as_slice()).and_then(|of| holds_most(of, findings, reader)));
+    said.extend(
+        headline.map(|of| of.partitions.as_slice()).and_then(|of| holds_most(of, findings, cause, reader)),
+    );
     said.extend(by_year.low_snow.as_ref().and_then(|low| low_snow(low, findings, reader)));
     said.extend(by_year.low_snow.as_ref().and_then(|low| without_warming(low, reader)));
     said.extend(by_year.worst_years.first().and_then(|worst| worst_year(worst, by_year, findings, reader)));
@@ -26,7 +28,7 @@ pub(super) fn years(findings: &Findings, reader: Reader) -> Vec<String> {
 }
 
 /// From which averaging period on the warming holds the largest share, levels of one answer together.
-fn holds_most(partitions: &[Partition], findings: &Findings, reader: Reader) -> Option<String> {
+fn holds_most(partitions: &[Partition], findings: &Findings, cause: &str, reader: Reader) -> Option<String> {
     let reference_c = findings.levels_c[findings.reference];
     let mut groups: Vec<(HoldsMost, Vec<String>)> = Vec::new();
     for of in partitions.iter().filter(|of| of.level_c > reference_c) {
@@ -52,7 +54,7 @@ fn holds_most(partitions: &[Partition], findings: &Findings, reader: Reader) -> 
     let groups: Vec<String> = groups.iter().map(said).collect();
     (!groups.is_empty()).then(|| {
         format!(
-            "Of all that makes years, or means over several, differ, the warming holds the largest share {}.",
+            "Of all that makes years, or means over several, differ, the {cause} holds the largest share {}.",
             groups.join("; ")
         )
     })
@@ -93,6 +95,16 @@ fn without_warming(low: &LowSnow, reader: Reader) -> Option<String> {
     let of = low.without_warming.first()?;
     let warming = reader.difference(of.level_c.abs());
     Some(match of.chance_ratio {
+        Some(ratio) if ratio.q05.is_none() || ratio.q95.is_none() => format!(
+            "Without {warming} of warming so few simulated years are low that it cannot be told how much more often the record's \
+             own climate has them."
+        ),
+        Some(ratio) if ratio.side_of(1.0).is_none() => format!(
+            "In this model, the record's own climate has low-snow years {} times as often{} as the same weather without {warming} \
+             of warming: too near to tell.",
+            fixed(ratio.value, 1),
+            range(ratio, 1.0, 1, "")
+        ),
         Some(ratio) => format!(
             "In this model, the record's own climate has low-snow years {} times as often{} as the same weather without {warming} \
              of warming: how much the odds move, not what caused any year.",
@@ -250,7 +262,7 @@ pub fn in_years(chance: f64) -> String {
         ..=0.0 => "no simulated year".to_owned(),
         1.0.. => "every simulated year".to_owned(),
         _ if hundredths < 1.0 => "fewer than 1 in 100 years".to_owned(),
-        _ if tenths < 1.0 => format!("{hundredths} in 100 years"),
+        ..0.095 => format!("{hundredths} in 100 years"),
         _ if tenths > 9.0 => "more than 9 in 10 years".to_owned(),
         _ => format!("{tenths} in 10 years"),
     }

@@ -91,7 +91,8 @@ fn dry_and_warm(found: &Coincidence, findings: &Findings, reader: Reader) -> Str
                     chance(cool)
                 )
             }
-            _ => " There are not both warm and cool dry years, so that their snow cannot be compared."
+            _ => " The snow of dry years cannot be compared: there are not both warm and cool ones, or too many of the reference's \
+                  years are bare."
                 .to_owned(),
         }
 }
@@ -141,9 +142,9 @@ fn of_record(found: &RecordCoincidence) -> String {
     };
     if let Some(periods) = found.periods.filter(is_told) {
         let verdict = if periods.are_apart {
-            "the intervals lie apart"
+            "by the same test that is hardly chance"
         } else {
-            "the intervals overlap, so that the record cannot tell the two periods apart"
+            "so few years cannot tell the two periods apart"
         };
         let ratio =
             periods.ratio.map_or(String::new(), |ratio| format!(", {} times the share", fixed(ratio, 2)));
@@ -206,7 +207,12 @@ fn band_change(change: &BandChangeLevel, findings: &Findings, reader: Reader) ->
         words += &format!("; the one at {} most volume", band(at));
     }
     let gain: Vec<String> = change.of_sign(Sign::Gains).into_iter().map(band).collect();
-    let open = change.of_sign(Sign::CannotTell).len();
+    // Bands that are bare at both are no open question.
+    let is_bare = |band: &usize| {
+        let range = change.bands[*band].map(|change| change.range_mm);
+        range.is_some_and(|range| range.q05 == 0.0 && range.q95 == 0.0)
+    };
+    let open = change.of_sign(Sign::CannotTell).iter().filter(|band| !is_bare(band)).count();
     words += &match gain.as_slice() {
         [] => ". No band gains beyond its 5–95 % range.".to_owned(),
         bands => format!(". Gains beyond their 5–95 % range: {}.", bands.join(", ")),

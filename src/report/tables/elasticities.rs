@@ -2,7 +2,7 @@
 
 use super::cells::{estimate, finish, write};
 use crate::basin::Band;
-use crate::findings::{Estimate, ResponseSurface, Slope};
+use crate::findings::{Estimate, ResponseSurface, Slope, compound_share_pct};
 use crate::units::UnitSystem;
 use csv::Writer;
 
@@ -28,7 +28,7 @@ pub(super) fn elasticities(surface: &ResponseSurface, bands: &[Band], units: Uni
     ];
     write(&mut writer, &header);
     let per_degree =
-        |found: Option<Estimate>| found.map(|found| scaled(found, 1.0 / units.warming().of(1.0)));
+        |found: Option<Estimate>| found.map(|found| compound_share_pct(found, units.warming().of(1.0)));
     for at in &surface.slopes {
         let mut row = |place: [String; 3], slope: &Slope, interaction: [Option<Estimate>; 2]| {
             let mut row = vec![units.warming().of(at.level_c).to_string()];
