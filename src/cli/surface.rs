@@ -43,7 +43,8 @@ pub(super) fn warmed(
     let is_plain = |level_c: &f64| {
         let warming = &scenario.warming.warming;
         let factor = warming.precipitation.factor(*level_c);
-        warming.wet_day_intensity_pct_per_c.is_none() && factor.iter().all(|factor| *factor == 1.0)
+        warming.wet_day_intensity_pct_per_c.is_none_or(|pct_per_c| pct_per_c == 0.0)
+            && factor.iter().all(|factor| *factor == 1.0)
     };
     let levels_are_plain = levels_c.iter().all(is_plain);
     let reference_c = levels_c[scenario.warming.reference];

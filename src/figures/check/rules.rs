@@ -91,7 +91,11 @@ fn the_title_says_how_many_rules_turn_the_verdict() {
     let title =
         |loss_mm, is_tuned| drawn(&with_panel(&PLAIN, loss_mm, is_tuned), UnitSystem::Metric).unwrap().title;
     let clear = title(-60.0, true);
-    assert!(clear.ends_with("none of 4 other rules turns the verdict"), "{clear}");
+    // At the lower levels some lie within two errors of 1.
+    assert!(
+        clear.ends_with("none of 4 other rules turns the verdict, some levels too near to call"),
+        "{clear}"
+    );
     let turned = title(-17.0, true);
     assert!(
         turned.contains("turn the verdict at a level") || turned.contains("turns the verdict at a level"),
