@@ -22,6 +22,7 @@ mod ready;
 mod replayed_years;
 mod rule_panel;
 mod runs;
+mod size;
 mod start;
 mod study;
 mod surface;

@@ -88,14 +88,8 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     };
     let generator_sheet = generator_sheet(ready, progress).map_err(halted)?;
 
-    // Only a warmer level has something to be made up for.
-    let warmed = if warming.reference + 1 < warming.levels_c.len() {
-        progress.stage("running warming together with changes of precipitation");
-        Some(warmed(ready, &plan, &groups, &*made, &Quiet(progress)).map_err(halted)?)
-    } else {
-        None
-    };
-    let (surface, break_even) = warmed.unzip();
+    progress.stage("running warming together with changes of precipitation");
+    let (surface, break_even) = warmed(ready, &plan, &groups, &*made, &Quiet(progress)).map_err(halted)?;
 
     let rule_panel = rule_panel(ready, &plan, &study.basin, progress).map_err(halted)?;
 
@@ -137,9 +131,9 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let comparisons = ready.comparisons().map_err(open)?;
     let generator = Some(generator_sheet);
     Ok(Findings {
-        surface,
+        surface: Some(surface),
         by_year,
-        break_even,
+        break_even: Some(break_even),
         parameter_spread,
         rule_panel,
         warm_year_biases,

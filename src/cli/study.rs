@@ -10,10 +10,10 @@ use super::pool::in_pool;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
 use super::ready::Ready;
 use super::runs;
+use super::size::check_size;
 use crate::ensemble::RecordYear;
-use crate::fault::Fault;
 use crate::figures::{FIGURES, Setting, of_sites};
-use crate::findings::{BandFindings, Findings, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS};
+use crate::findings::{BandFindings, Findings};
 use crate::report::numbers::counted;
 use crate::report::{
     Answer, Reader, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html, manifest_json,
@@ -22,9 +22,6 @@ use crate::report::{
 use crate::season::Measures;
 use serde::Serialize;
 use std::path::{Path, PathBuf};
-
-/// A study that would keep more single years than this is refused before it starts, bytes.
-const MOST_KEPT_BYTES: f64 = 4e9;
 
 #[cfg(test)]
 mod said;
@@ -183,28 +180,4 @@ fn target(ready: &Ready, shared: &Shared) -> Result<PathBuf, Failure> {
             "a scenario from standard input needs --into DIR for its results".to_owned(),
         )),
     }
-}
-
-/// Refuses a study whose results would not fit: single years of the basin, period values of the bands and
-/// single years of their headline measure, single years of the resampled records.
-fn check_size(ready: &Ready, measures: usize, shared: &Shared) -> Result<(), Failure> {
-    let realizations = &ready.scenario.realizations;
-    let kept_of_each = realizations.years + ready.basin.bands.len();
-    let levels = ready.scenario.warming.levels_c.len();
-    let of_records = realizations.count.min(REALIZATIONS_OF_A_RECORD) * RESAMPLED_RECORDS;
-    let of_records = f64::from(of_records) * realizations.years as f64;
-    let kept = f64::from(realizations.count) * kept_of_each as f64 + of_records;
-    let of_bands = f64::from(realizations.count) * (realizations.years * ready.basin.bands.len()) as f64;
-    let bytes = (kept * measures as f64 + of_bands) * levels as f64 * 8.0;
-    if bytes <= MOST_KEPT_BYTES {
-        return Ok(());
-    }
-    let fault = Fault::key(
-        "realizations.count",
-        realizations.count,
-        format!("a study whose single years and bands take at most {} GB", MOST_KEPT_BYTES / 1e9),
-        format!("these would take {:.0} GB: run fewer realizations, years, levels or bands", bytes / 1e9),
-    );
-    let file = &ready.files[0];
-    Err(Failure::input(&[fault], &file.name, &file.text, shared.is_coloured()))
 }

@@ -4,7 +4,7 @@ use super::break_even::{Search, break_even};
 use super::level_groups::LevelGroups;
 use super::ready::Ready;
 use super::wetness::Wetness;
-use crate::ensemble::{Halt, LevelGroup, NodeRuns, Plan, Watch, run_nodes};
+use crate::ensemble::{Halt, LevelGroup, Plan, Watch, run_nodes};
 use crate::findings::{BreakEven, Change, Nodes, ResponseSurface, Root, SurfaceQuestions};
 use crate::perturb::{Generator, Kept, MeanChange, MonthlyChange};
 use crate::season::Measures;
@@ -104,18 +104,17 @@ fn run(
     let measures = Measures::of_snow_and_timing(plan.measures.settings().clone(), ready.basin.area_km2());
     let classes = ready.scenario.snow.options.patchiness.map_or(1, |patchiness| patchiness.classes);
     let nodes_of_a_run = (MOST_LANES / (plan.bands * classes)).max(8);
-    let mut runs: Option<NodeRuns> = None;
-    for nodes in changes[1..].chunks(nodes_of_a_run) {
+    let with_reference = |nodes: &[Change]| {
         let of_nodes = changes[..1].iter().chain(nodes);
         let lanes = ready.lanes(&of_nodes.map(|node| change(ready, node)).collect::<Vec<_>>());
         let groups = [LevelGroup { lanes: &lanes, generator }];
-        let found = run_nodes(&Plan { groups: &groups, reference: 0, measures: &measures, ..*plan }, watch)?;
-        runs = Some(match runs {
-            Some(before) => before.and(&found),
-            None => found,
-        });
+        run_nodes(&Plan { groups: &groups, reference: 0, measures: &measures, ..*plan }, watch)
+    };
+    let (first, others) = changes[1..].split_at(nodes_of_a_run.min(changes.len() - 1));
+    let mut runs = with_reference(first)?;
+    for nodes in others.chunks(nodes_of_a_run) {
+        runs = runs.and(&with_reference(nodes)?);
     }
-    let runs = runs.unwrap_or_else(|| unreachable!("a grid has more nodes than the reference"));
     Ok(Nodes::new(changes, runs, ready.scenario.seed))
 }
 

@@ -9,9 +9,7 @@ use super::labels::signed_percent;
 use super::marks::{Form, Marking, marker};
 use super::page::Paragraphs;
 use super::sheet::{Drawn, HPos, Plot, Px, Sheet, Stroke, VPos};
-use super::theme::{
-    EDGE, INK, LABEL, MARGIN_PX, NAME, ONE_OF_MANY, QUIET, WIDTH_PX, change_ground, level_ink,
-};
+use super::theme::{EDGE, INK, LABEL, MARGIN_PX, NAME, ONE_OF_MANY, QUIET, WIDTH_PX, change_ground};
 use super::value_ticks::ValueTicks;
 use super::{Figure, Part, Setting, Svg};
 use crate::findings::{ChangeOrigin, Findings, ResponseSurface};
@@ -127,11 +125,11 @@ fn paint(
     })?;
     sheet.group("break-even", || break_even(&sheet, &plot, surface, wettest))?;
     sheet.group("named", || {
-        for (named, marking) in surface.named.iter().zip(rows::markings(surface)) {
+        for (named, mark) in surface.named.iter().zip(rows::marks(surface)) {
             let change = named.node.change;
             let place = plot.at(change.warming_c, change.precipitation_change_pct);
             if inside(place) {
-                marker(&sheet, place, marking)?;
+                mark.draw(&sheet, place)?;
             }
         }
         let reference = plot.at(findings.levels_c[findings.reference], 0.0);
@@ -257,11 +255,6 @@ fn break_even(sheet: &Sheet, plot: &Plot, surface: &ResponseSurface, wettest: f6
         before = Some(here);
     }
     if line.len() > 1 { sheet.line(&line, Stroke::solid(INK, 2.4)) } else { Ok(()) }
-}
-
-/// The ink of a case, by its place among all.
-fn case_ink(place: usize, of: usize) -> plotters::style::RGBColor {
-    level_ink(place + 1, 0, of + 1)
 }
 
 /// Whether it is a case of the scenario.

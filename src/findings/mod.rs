@@ -25,6 +25,7 @@ mod low_snow;
 mod measure;
 mod normal;
 mod odds;
+mod offset;
 mod parameter_spread;
 mod partition;
 mod perennial;
@@ -85,6 +86,7 @@ pub use normal::{
     CLASS_LIMITS_PCT, LevelPercents, MedianSwe, NormalQuestions, PercentOfMedian, UNSTABLE_BELOW_SHARE,
     percent_of_median,
 };
+pub use offset::Offset;
 pub use parameter_spread::{LevelBySet, MeasureBySet, Mover, OverSets, ParameterSpread, SetRuns, Weighed};
 pub use partition::{AVERAGED_YEARS, HoldsMost, Partition, PartitionedPeriod};
 pub use perennial::PerennialBand;

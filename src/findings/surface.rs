@@ -3,6 +3,7 @@
 
 use super::break_even::{Root, Stays};
 use super::elasticity::Slopes;
+use super::offset::Offset;
 use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Ranked, Resamples};
 use super::tipping::{Criterion, FailureLine};
@@ -90,6 +91,8 @@ pub struct ResponseSurface {
     pub named: Vec<NamedNode>,
     /// For each warming of the grid the precipitation that brings the headline back to the reference. Found by runs of its own.
     pub break_even: Vec<CurvePoint>,
+    /// The warming that a stated increase of precipitation makes up for; none where the grid has no warmer one.
+    pub offset: Option<Offset>,
     /// For each criterion that can be drawn, where on the grid it begins to fail.
     pub failure_lines: Vec<FailureLine>,
     /// How much degrees and percents do, at every level.
@@ -141,9 +144,9 @@ pub struct CurvePoint {
     pub precipitation_change_pct: Option<f64>,
     /// Where there is none: on which side it stays, from -50 to +100 %.
     pub stays: Option<Stays>,
-    /// Its 5 and 95 % quantiles over resampled realizations, percent, by straight lines between the nodes of the grid; none
-    /// where a resample's lies beyond the grid.
-    pub range_pct: Option<[f64; 2]>,
+    /// Its 5 and 95 % quantiles over resampled realizations, percent, by straight lines between the nodes of the grid; an end is
+    /// none where it lies beyond the grid.
+    pub range_pct: Option<[Option<f64>; 2]>,
 }
 
 /// A realization's own weather: means over its period against the record's mean, of the cool season.
@@ -199,6 +202,8 @@ impl SurfaceQuestions<'_> {
             Some(NamedNode { name: named.name.clone(), origin: named.origin, node: node(named.change)? })
         });
         let reference = Change { warming_c: self.reference_c, precipitation_change_pct: 0.0 };
+        let break_even: Vec<CurvePoint> =
+            curve.iter().map(|(warming_c, root)| self.point(nodes, *warming_c, *root)).collect();
         ResponseSurface {
             realizations: nodes.runs.periods.len_of(Axis(2)),
             levels_warm_alone: self.levels_warm_alone,
@@ -208,7 +213,8 @@ impl SurfaceQuestions<'_> {
             measures: shown.iter().map(|at| nodes.runs.measures[*at].clone()).collect(),
             nodes: self.warmings_c.iter().copied().flat_map(grid).filter_map(node).collect(),
             named: named.collect(),
-            break_even: curve.iter().map(|(warming_c, root)| self.point(nodes, *warming_c, *root)).collect(),
+            offset: Offset::of(&break_even, self.reference_c),
+            break_even,
             failure_lines: self.criteria.iter().filter_map(|of| FailureLine::of(of, nodes, self)).collect(),
             slopes: self.levels_c.iter().map(|level_c| Slopes::of(nodes, *level_c, self)).collect(),
             realized: realized.to_vec(),
@@ -226,7 +232,7 @@ impl SurfaceQuestions<'_> {
     }
 
     /// The break-even of every resample by straight lines between the grid's nodes.
-    fn range_pct(&self, nodes: &Nodes, warming_c: f64) -> Option<[f64; 2]> {
+    fn range_pct(&self, nodes: &Nodes, warming_c: f64) -> Option<[Option<f64>; 2]> {
         let at = |warming_c, precipitation_change_pct| {
             nodes.resampled_medians(Change { warming_c, precipitation_change_pct })
         };
@@ -241,17 +247,25 @@ impl SurfaceQuestions<'_> {
             })
             .collect();
         let roots = sorted(roots.filter(|roots| !roots.is_empty())?);
-        Some([quantile(&roots, 0.05), quantile(&roots, 0.95)])
+        Some([0.05, 0.95].map(|share| Some(quantile(&roots, share)).filter(|end| end.is_finite())))
     }
 }
 
-/// Where values at ascending places first pass 0 upwards, by straight lines; none where they do not.
+/// Where values at ascending places first pass 0 upwards, by straight lines: below all places where none of them is below 0,
+/// above all where none reaches it. None where a value is no number, or they fall through 0 alone.
 fn root_between(places: &[f64], values: &[f64]) -> Option<f64> {
-    let ends = places.windows(2).zip(values.windows(2));
-    let mut roots = ends.filter(|(_, values)| values[0] < 0.0 && values[1] >= 0.0);
-    roots
-        .next()
-        .map(|(places, values)| places[0] + (places[1] - places[0]) * values[0] / (values[0] - values[1]))
+    if values.iter().any(|value| value.is_nan()) {
+        return None;
+    }
+    let root =
+        places.windows(2).zip(values.windows(2)).find(|(_, values)| values[0] < 0.0 && values[1] >= 0.0);
+    match root {
+        Some((places, values)) => {
+            Some(places[0] + (places[1] - places[0]) * values[0] / (values[0] - values[1]))
+        }
+        None if values.iter().all(|value| *value >= 0.0) => Some(f64::NEG_INFINITY),
+        None => values.iter().all(|value| *value < 0.0).then_some(f64::INFINITY),
+    }
 }
 
 impl Nodes {
@@ -344,12 +358,14 @@ fn percent_of(kind: Kind, here: f64, reference: f64) -> Option<f64> {
 mod tests {
     use super::*;
 
-    /// Hand-computed: -10 at 0 and +30 at 20 are 0 at 5; nothing is found where they do not pass.
+    /// Hand-computed: -10 at 0 and +30 at 20 are 0 at 5. Where all lies above 0 the root is below the grid, and the other way round.
     #[test]
     fn straight_lines_pass_where_they_should() {
         assert_eq!(root_between(&[0.0, 20.0], &[-10.0, 30.0]), Some(5.0));
         assert_eq!(root_between(&[0.0, 20.0, 40.0], &[-10.0, -5.0, 5.0]), Some(30.0));
-        assert_eq!(root_between(&[0.0, 20.0], &[10.0, 30.0]), None);
+        assert_eq!(root_between(&[0.0, 20.0], &[10.0, 30.0]), Some(f64::NEG_INFINITY));
+        assert_eq!(root_between(&[0.0, 20.0], &[-10.0, -3.0]), Some(f64::INFINITY));
+        assert_eq!(root_between(&[0.0, 20.0], &[3.0, -10.0]), None);
         assert_eq!(root_between(&[0.0, 20.0], &[f64::NAN, 30.0]), None);
     }
 }

@@ -1,7 +1,6 @@
 //! Tipping levels: at which warming something that the user wants to hold begins to fail.
 
 use super::crossing::{Crossing, CrossingRange, range_of};
-use super::low_snow::LOW_SNOW_BELOW_QUANTILE;
 use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Ranked, Resamples};
 use super::surface::{Change, Nodes, SurfaceQuestions};
@@ -29,11 +28,12 @@ pub enum Asks {
         /// Where it was stated as a volume of water over the whole basin, hm3.
         volume_hm3: Option<f64>,
     },
-    /// Low-snow years in at most this share: years below the quantile of the reference that makes one in five of its own
-    /// years low.
+    /// Low-snow years in at most this share.
     LowSnowYearsAtMost {
         /// 0 to 1.
         share: f64,
+        /// Quantile of the reference's single years below which a year is low.
+        below_quantile: f64,
     },
 }
 
@@ -42,10 +42,11 @@ pub enum Asks {
 pub struct TippingLevel {
     /// The criterion.
     pub criterion: Criterion,
-    /// What it asks about, at every level.
+    /// What it asks about, at every level; empty where it cannot be asked.
     pub levels: Vec<CriterionLevel>,
-    /// Whether it holds at the reference; nothing is said of where it fails if not.
-    pub holds_at_reference: bool,
+    /// Whether it holds at the reference; nothing is said of where it fails if not. None where it cannot be asked: the limit of a
+    /// low-snow year is bare ground, below which nothing lies.
+    pub holds_at_reference: Option<bool>,
     /// The first warming at which it fails, scanning up from the reference, linear between levels.
     pub fails: Crossing,
     /// The Monte Carlo range of that warming: 5-95 % over resampled realizations; a resample that fails at the reference counts
@@ -78,17 +79,18 @@ impl Asks {
     fn margin(self, value: f64) -> f64 {
         match self {
             Self::MedianAtLeast { swe_mm, .. } => value - swe_mm,
-            Self::LowSnowYearsAtMost { share } => share - value,
+            Self::LowSnowYearsAtMost { share, .. } => share - value,
         }
     }
 
-    /// What is asked about, of single years; `reference` are those of the reference.
-    fn value(self, years: &[f64], reference: &[f64]) -> f64 {
+    /// What is asked about, of single years; `reference` are those of the reference. None where no year can be low.
+    fn value(self, years: &[f64], reference: &[f64]) -> Option<f64> {
         match self {
-            Self::MedianAtLeast { .. } => quantile(&sorted(years.iter().copied()), 0.5),
-            Self::LowSnowYearsAtMost { .. } => {
-                let low_mm = quantile(&sorted(reference.iter().copied()), LOW_SNOW_BELOW_QUANTILE);
-                years.iter().filter(|swe_mm| **swe_mm < low_mm).count() as f64 / years.len() as f64
+            Self::MedianAtLeast { .. } => Some(quantile(&sorted(years.iter().copied()), 0.5)),
+            Self::LowSnowYearsAtMost { below_quantile, .. } => {
+                let low_mm = quantile(&sorted(reference.iter().copied()), below_quantile);
+                let low = || years.iter().filter(|swe_mm| **swe_mm < low_mm).count();
+                (low_mm > 0.0).then(|| low() as f64 / years.len() as f64)
             }
         }
     }
@@ -97,8 +99,11 @@ impl Asks {
     fn resampled(self, years: &Ranked, reference: &Ranked, resamples: &Resamples) -> Vec<Option<f64>> {
         resamples.each(|weights| match self {
             Self::MedianAtLeast { .. } => years.quantiles(weights, [0.5]).map(|[median]| median),
-            Self::LowSnowYearsAtMost { .. } => {
-                let [low_mm] = reference.quantiles(weights, [LOW_SNOW_BELOW_QUANTILE])?;
+            Self::LowSnowYearsAtMost { below_quantile, .. } => {
+                let [low_mm] = reference.quantiles(weights, [below_quantile])?;
+                if low_mm <= 0.0 {
+                    return None;
+                }
                 let count = |of: &mut dyn Iterator<Item = &(f64, usize)>| {
                     of.map(|(_, realization)| f64::from(weights[*realization])).sum::<f64>()
                 };
@@ -127,16 +132,17 @@ impl TippingLevel {
         let resampled: Vec<Vec<Option<f64>>> = (0..levels_c.len())
             .map(|level| asks.resampled(&ranked(level), &reference_ranked, resamples))
             .collect();
-        let levels: Vec<CriterionLevel> = (0..levels_c.len())
+        let of_each: Option<Vec<CriterionLevel>> = (0..levels_c.len())
             .map(|level| {
-                let value = asks.value(&plain(level), &reference_years);
-                CriterionLevel {
+                let value = asks.value(&plain(level), &reference_years)?;
+                Some(CriterionLevel {
                     level_c: levels_c[level],
                     value: Estimate::new(value, resampled[level].iter().copied()),
                     holds: asks.margin(value) >= 0.0,
-                }
+                })
             })
             .collect();
+        let levels = of_each.unwrap_or_default();
         let warmer = || reference + 1..levels_c.len();
         let first_failure = |value: &dyn Fn(usize) -> Option<f64>| {
             let mut below = (levels_c[reference], value(reference).map(|value| asks.margin(value)));
@@ -160,21 +166,21 @@ impl TippingLevel {
                 None => Crossing::Unknown,
             }
         };
-        let fails = first_failure(&|level| Some(levels[level].value.value));
+        let fails = first_failure(&|level| Some(levels.get(level)?.value.value));
         let of_resamples = (0..resampled[reference].len())
             .map(|resample| first_failure(&|level| resampled[level].get(resample).copied().flatten()));
         Self {
             criterion: criterion.clone(),
-            holds_at_reference: levels[reference].holds,
+            holds_at_reference: levels.get(reference).map(|level| level.holds),
             fails,
-            fails_range: range_of(of_resamples),
+            fails_range: range_of(of_resamples).filter(|_| !levels.is_empty()),
             levels,
         }
     }
 }
 
 impl FailureLine {
-    /// Asks a criterion at every node of the grid; nothing where a node is missing.
+    /// Asks a criterion at every node of the grid; nothing where a node is missing, or it cannot be asked.
     pub(super) fn of(criterion: &Criterion, nodes: &Nodes, questions: &SurfaceQuestions<'_>) -> Option<Self> {
         let at = |warming_c, precipitation_change_pct| {
             nodes.single_years(Change { warming_c, precipitation_change_pct })
@@ -183,7 +189,8 @@ impl FailureLine {
         let mut margins = Vec::new();
         for warming_c in &questions.warmings_c {
             for pct in &questions.precipitation_changes_pct {
-                margins.push(criterion.asks.margin(criterion.asks.value(&at(*warming_c, *pct)?, &reference)));
+                margins
+                    .push(criterion.asks.margin(criterion.asks.value(&at(*warming_c, *pct)?, &reference)?));
             }
         }
         Some(Self { name: criterion.name.clone(), margins })
@@ -219,7 +226,7 @@ mod tests {
             "as much as is asked is enough"
         );
         let already = at_least(201.0);
-        assert!(!already.holds_at_reference);
+        assert_eq!(already.holds_at_reference, Some(false));
         assert_eq!(already.fails, Crossing::At { level_c: 0.0, until_c: None });
         let alone = asked(Asks::MedianAtLeast { swe_mm: 1.0, volume_hm3: None }, &LEVELS[..1]);
         assert_eq!(alone.fails, Crossing::Unknown);
@@ -230,9 +237,22 @@ mod tests {
     #[test]
     fn low_snow_years_are_counted_against_the_reference() {
         let levels = [[10.0, 20.0, 30.0, 40.0], [5.0, 11.0, 30.0, 40.0], [1.0, 2.0, 3.0, 4.0]];
-        let found = asked(Asks::LowSnowYearsAtMost { share: 0.375 }, &levels);
+        let at_most = |share, below_quantile| Asks::LowSnowYearsAtMost { share, below_quantile };
+        let found = asked(at_most(0.375, 0.2), &levels);
         let shares: Vec<f64> = found.levels.iter().map(|level| level.value.value).collect();
         assert_eq!(shares, [0.25, 0.5, 1.0]);
         assert_eq!(found.fails, Crossing::At { level_c: 0.5, until_c: None });
+        // Its median, 25: half of the years lie below, then half, then all.
+        let shares = asked(at_most(0.6, 0.5), &levels).levels.into_iter().map(|level| level.value.value);
+        assert_eq!(shares.collect::<Vec<_>>(), [0.5, 0.5, 1.0]);
+    }
+
+    /// An identity: where the limit is bare ground nothing lies below it, so that no share of low years says that anything holds.
+    #[test]
+    fn low_snow_years_of_bare_ground_cannot_be_asked_for() {
+        let levels = [[0.0, 0.0, 0.0, 40.0], [0.0; 4]];
+        let found = asked(Asks::LowSnowYearsAtMost { share: 0.3, below_quantile: 0.2 }, &levels);
+        assert_eq!((found.holds_at_reference, found.fails), (None, Crossing::Unknown));
+        assert!(found.levels.is_empty() && found.fails_range.is_none());
     }
 }

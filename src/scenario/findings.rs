@@ -47,7 +47,7 @@ pub struct FindingsTyped {
 impl FindingsTyped {
     /// What is to hold in a basin of so many km2.
     pub fn criteria(&self, area_km2: f64) -> Vec<Criterion> {
-        self.criteria.iter().map(|typed| typed.of(area_km2)).collect()
+        self.criteria.iter().map(|typed| typed.of(area_km2, self.low_snow.below_quantile)).collect()
     }
 }
 
@@ -56,12 +56,12 @@ pub(super) fn read(mut section: Section<'_>) -> (Option<String>, Option<Findings
     let surface = surface::read(section.section("surface"));
     let cases = cases::read(section.sections("cases"));
     let projections_file = projections::read(&mut section);
-    let criteria = criteria::read(section.sections("criteria"));
+    let low_snow = low_snow::read(section.section("low_snow"));
+    let criteria = criteria::read(section.sections("criteria"), low_snow.below_quantile);
     let rule_panel = rule_panel::read(&mut section);
     let replayed_years = replayed_years::read(&mut section);
     let periods_compared = periods_compared::read(section.section("periods_compared"));
     let snow_line = snow_line::read(section.section("snow_line"));
-    let low_snow = low_snow::read(section.section("low_snow"));
     let states_rate = section.has("warming_rate");
     let warming_rate = warming_rate::read(section.section("warming_rate"));
     section.finish();

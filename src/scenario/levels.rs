@@ -1,5 +1,6 @@
 //! `warming.levels_c`, or `[warming.global]` with levels of global warming.
 
+use super::degrees::{Degrees, FAHRENHEIT_PER_CELSIUS, typed_degrees};
 use super::section::Section;
 use crate::fault::Fault;
 use crate::perturb::GlobalWarming;
@@ -12,9 +13,6 @@ const MOST_LEVELS: usize = 40;
 const USUAL_LOCAL_PER_GLOBAL: std::ops::RangeInclusive<f64> = 0.8..=2.5;
 /// Global warming by the middle of any instrumental record so far, degC.
 const USUAL_ALREADY_C: std::ops::RangeInclusive<f64> = 0.0..=1.6;
-
-/// A difference of 1 degC is one of so many degF.
-const FAHRENHEIT_PER_CELSIUS: f64 = 1.8;
 
 /// How levels are typed.
 struct Typed {
@@ -61,31 +59,17 @@ pub(super) fn read_levels(section: &mut Section<'_>) -> Option<Levels> {
         return read_global(section.section("global"));
     }
     section.knows("global");
-    let typed_c = match own {
-        [true, true] => {
-            section.knows("levels_c");
-            section.knows("levels_f");
-            section.fault(Fault::key(
-                section.path_of("levels_f"),
-                "levels_f beside levels_c",
-                "one of the two",
-                "take one of them out",
-            ));
-            None
-        }
-        [_, true] => {
-            section.knows("levels_c");
+    let typed_c = match typed_degrees(section, "levels_c", "levels_f") {
+        Degrees::Both => None,
+        Degrees::Fahrenheit => {
             let levels = section.numbers("levels_f");
             let typed = levels.and_then(|levels| check(section, &IN_FAHRENHEIT, levels));
             typed.map(|levels| levels.into_iter().map(|level| level / FAHRENHEIT_PER_CELSIUS).collect())
         }
-        [true, false] => {
-            section.knows("levels_f");
+        Degrees::Celsius => {
             section.numbers("levels_c").and_then(|levels| check(section, &IN_CELSIUS, levels))
         }
-        [false, false] => {
-            section.knows("levels_c");
-            section.knows("levels_f");
+        Degrees::Neither => {
             section.default("levels_c", "[0, 1, 2, 3, 4]");
             Some(vec![0.0, 1.0, 2.0, 3.0, 4.0])
         }

@@ -6,6 +6,7 @@
 
 mod basin;
 mod days;
+mod degrees;
 mod document;
 mod draw;
 mod elevation;

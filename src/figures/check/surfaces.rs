@@ -58,6 +58,7 @@ pub fn made(measure: &Measure, [middle, change]: [f64; 2], reference_c: f64) -> 
             named("Model one", ChangeOrigin::Projection, at(2.0, 3.0)),
         ],
         break_even: warmings_c.iter().map(curve).collect(),
+        offset: None,
         failure_lines: vec![FailureLine {
             name: "Refill".to_owned(),
             margins: grid.iter().map(|at| swe(*at) - 0.8 * middle).collect(),

@@ -2,16 +2,19 @@
 
 use super::super::labels::{level, signed_percent};
 use super::super::marks::{Form, Marking, marker};
-use super::super::sheet::{Drawn, HPos, Sheet, Stroke, VPos};
-use super::super::theme::{DRY, INK, LABEL, MARGIN_PX, QUIET, WIDTH_PX};
+use super::super::sheet::{Drawn, HPos, Px, Sheet, Stroke, VPos};
+use super::super::theme::{DRY, INK, LABEL, Lettering, MARGIN_PX, PAPER, QUIET, WIDTH_PX};
 use super::super::{Setting, labels::counted};
-use super::{case_ink, is_case};
+use super::is_case;
 use crate::findings::{NamedNode, ResponseSurface};
 
 const ROW_PX: f64 = 20.0;
 const MARK_PX: f64 = 34.0;
 /// More cases than this are not named below the drawing.
 const MOST_CASES: usize = 12;
+const NUMBER_RADIUS_PX: f64 = 9.0;
+/// A case's number on its mark.
+const NUMBER: Lettering = Lettering { class: "number", size_px: 12.0, is_bold: true, ink: PAPER };
 
 /// Rows of text, each with its mark.
 pub(super) struct Rows {
@@ -19,7 +22,7 @@ pub(super) struct Rows {
 }
 
 enum Mark {
-    Case(Marking),
+    Named(NamedMark),
     Line(Stroke),
 }
 
@@ -32,15 +35,33 @@ pub(super) fn failure_strokes() -> impl Iterator<Item = Stroke> {
     })
 }
 
-/// How each named change is marked: the cases by their places, projections all alike.
-pub(super) fn markings(surface: &ResponseSurface) -> Vec<Marking> {
-    let cases = surface.named.iter().filter(|named| is_case(named.origin)).count();
-    let of = |(place, named): (usize, &NamedNode)| {
-        if is_case(named.origin) {
-            Marking { ink: case_ink(place, cases), form: Form::of_level(place + 1), is_hollow: false }
-        } else {
-            Marking { ink: QUIET, form: Form::Triangle, is_hollow: true }
+/// How a named change is marked: cases all in one ink, told apart by their numbers, since a level's colour would say which
+/// warming it is; projections all alike.
+#[derive(Clone, Copy)]
+pub(super) enum NamedMark {
+    /// A case by its place in the scenario's list, from 1.
+    Case(usize),
+    Projection,
+}
+
+impl NamedMark {
+    pub fn draw(self, sheet: &Sheet, place: Px) -> Drawn {
+        match self {
+            Self::Case(number) => {
+                sheet.dot(place, NUMBER_RADIUS_PX, INK)?;
+                sheet.write(&number.to_string(), place, NUMBER, HPos::Center, VPos::Center)
+            }
+            Self::Projection => {
+                marker(sheet, place, Marking { ink: QUIET, form: Form::Triangle, is_hollow: true })
+            }
         }
+    }
+}
+
+/// The mark of every named change; the scenario's cases come first.
+pub(super) fn marks(surface: &ResponseSurface) -> Vec<NamedMark> {
+    let of = |(place, named): (usize, &NamedNode)| {
+        if is_case(named.origin) { NamedMark::Case(place + 1) } else { NamedMark::Projection }
     };
     surface.named.iter().enumerate().map(of).collect()
 }
@@ -49,7 +70,7 @@ impl Rows {
     pub fn of(surface: &ResponseSurface, setting: &Setting<'_>) -> Self {
         let mut rows = Vec::new();
         let mut projections = 0;
-        for (named, marking) in surface.named.iter().zip(markings(surface)) {
+        for (named, mark) in surface.named.iter().zip(marks(surface)) {
             if !is_case(named.origin) {
                 projections += 1;
             } else if rows.len() < MOST_CASES {
@@ -62,19 +83,17 @@ impl Rows {
                     level(setting.units, change.warming_c),
                     signed_percent(change.precipitation_change_pct)
                 );
-                rows.push((Mark::Case(marking), text));
+                rows.push((Mark::Named(mark), text));
             }
         }
         if projections > 0 {
-            let marking = Marking { ink: QUIET, form: Form::Triangle, is_hollow: true };
-            rows.push((
-                Mark::Case(marking),
-                format!("{} of the stated file", counted(projections, "projection")),
-            ));
+            let said = format!("{} of the stated file", counted(projections, "projection"));
+            rows.push((Mark::Named(NamedMark::Projection), said));
         }
+        let alone = if surface.levels_warm_alone { "" } else { " (without the levels' stated change)" };
         let lines = surface.failure_lines.iter().zip(failure_strokes());
         rows.extend(lines.map(|(line, stroke)| {
-            (Mark::Line(stroke), format!("{}: holds above the line, fails below it", line.name))
+            (Mark::Line(stroke), format!("{}: holds above the line, fails below it{alone}", line.name))
         }));
         rows.push((
             Mark::Line(Stroke::solid(INK, 2.4)),
@@ -98,7 +117,7 @@ impl Rows {
             for (at, (mark, text)) in self.rows.iter().enumerate() {
                 let y = top + ROW_PX * (at as f64 + 0.5);
                 match mark {
-                    Mark::Case(marking) => marker(sheet, (MARGIN_PX + 12.0, y), *marking)?,
+                    Mark::Named(mark) => mark.draw(sheet, (MARGIN_PX + 12.0, y))?,
                     Mark::Line(stroke) => sheet.line(&[(MARGIN_PX, y), (MARGIN_PX + 24.0, y)], *stroke)?,
                 }
                 sheet.write(text, (MARGIN_PX + MARK_PX, y), LABEL, HPos::Left, VPos::Center)?;

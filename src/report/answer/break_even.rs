@@ -6,8 +6,14 @@ use super::period_name;
 use crate::findings::{BREAK_EVEN_BRACKET_PCT, BreakEven, BreakEvenLevel, Findings, MeasureFindings, Stays};
 use crate::season::LEAST_REFERENCE_MM;
 
-/// A sentence a warmer level, and how wet periods have been; none where there is hardly any snow to regain.
-pub(super) fn break_even(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> Vec<String> {
+/// A sentence a warmer level, and how wet periods have been; none where there is hardly any snow to regain. `on_top` says where
+/// the study states a change with its levels, to which that which makes up for it is added.
+pub(super) fn break_even(
+    findings: &Findings,
+    headline: &MeasureFindings,
+    on_top: &str,
+    reader: Reader,
+) -> Vec<String> {
     let Some(found) = &findings.break_even else {
         return Vec::new();
     };
@@ -18,7 +24,7 @@ pub(super) fn break_even(findings: &Findings, headline: &MeasureFindings, reader
     }
     let name = period_name(findings, headline);
     let mut words: Vec<String> =
-        warmer.into_iter().filter_map(|at| of_level(found, at, &name, reader)).collect();
+        warmer.into_iter().filter_map(|at| of_level(found, at, [&name, on_top], reader)).collect();
     let reached = &found.reached;
     let of = if reached.is_of_whole_years { "Precipitation" } else { "Cool-season precipitation" };
     let years = counted(reached.years, "year");
@@ -43,26 +49,32 @@ pub(super) fn at(
     findings: &Findings,
     headline: &MeasureFindings,
     at: usize,
+    on_top: &str,
     reader: Reader,
 ) -> Option<String> {
     let found = findings.break_even.as_ref().filter(|found| found.reference_median >= LEAST_REFERENCE_MM)?;
     let at = found.levels.iter().find(|level| level.level_c == findings.levels_c[at])?;
-    of_level(found, at, &period_name(findings, headline), reader)
+    of_level(found, at, [&period_name(findings, headline), on_top], reader)
 }
 
-fn of_level(found: &BreakEven, at: &BreakEvenLevel, name: &str, reader: Reader) -> Option<String> {
+fn of_level(
+    found: &BreakEven,
+    at: &BreakEvenLevel,
+    [name, on_top]: [&str; 2],
+    reader: Reader,
+) -> Option<String> {
     let level = reader.level(at.level_c);
     let [least, most] = BREAK_EVEN_BRACKET_PCT;
     let Some(pct) = at.precipitation_change_pct else {
         return Some(match at.stays? {
             Stays::Below => {
                 format!(
-                    "At {level}, no increase of precipitation up to {} % restores the {name}.",
+                    "At {level}, no increase of precipitation up to {} %{on_top} restores the {name}.",
                     signed(most, 0)
                 )
             }
             Stays::Above => format!(
-                "At {level}, the {name} stays above the reference's median even with {} % less precipitation.",
+                "At {level}, the {name} stays above the reference's median even with {} % less precipitation{on_top}.",
                 fixed(-least, 0)
             ),
         });
@@ -70,7 +82,7 @@ fn of_level(found: &BreakEven, at: &BreakEvenLevel, name: &str, reader: Reader) 
     let size = fixed(pct.abs(), usize::from(pct.abs() < 9.95));
     if pct <= 0.0 {
         return Some(format!(
-            "At {level}, the {name} would stand at the reference's median with {size} % less precipitation: there is nothing to \
+            "At {level}, the {name} would stand at the reference's median with {size} % less precipitation{on_top}: there is nothing to \
              be made up for."
         ));
     }
@@ -81,7 +93,7 @@ fn of_level(found: &BreakEven, at: &BreakEvenLevel, name: &str, reader: Reader) 
         count => fixed(count as f64, 0),
     };
     Some(format!(
-        "At {level}, {size} % more precipitation on every wet day would bring the {name} back to the reference's median; {so_wet} \
+        "At {level}, {size} % more precipitation on every wet day{on_top} would bring the {name} back to the reference's median; {so_wet} \
          of {} came to so much{season} by chance and assumption.",
         counted(reached.realizations, "realization")
     ))

@@ -71,12 +71,17 @@ pub struct Asked {
     pub answer: Vec<String>,
 }
 
-/// What a shift comes of: `warming`, or that with the change of precipitation that the study states for its levels.
-fn cause(findings: &Findings, warming: &Warming) -> &'static str {
+/// Whether the study states a change of precipitation with its levels.
+fn changes_precipitation(findings: &Findings, warming: &Warming) -> bool {
     let is_stated =
         |level_c: &f64| warming.precipitation.factor(*level_c).iter().any(|factor| *factor != 1.0);
     let wet_days_change = warming.wet_day_intensity_pct_per_c.is_some_and(|pct_per_c| pct_per_c != 0.0);
-    if wet_days_change || findings.levels_c.iter().any(is_stated) {
+    wet_days_change || findings.levels_c.iter().any(is_stated)
+}
+
+/// What a shift comes of: `warming`, or that with the change of precipitation that the study states for its levels.
+fn cause(findings: &Findings, warming: &Warming) -> &'static str {
+    if changes_precipitation(findings, warming) {
         "warming with its stated change of precipitation"
     } else {
         "warming"
@@ -94,6 +99,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
     }
     let levels = || headline.levels.iter();
     let changed = |level: &&LevelFindings| level.shift.is_some();
+    let on_top = if changes_precipitation(findings, warming) { " on top of its stated change" } else { "" };
     let mut answer = Answer {
         at_a_glance: Vec::new(),
         verdict,
@@ -107,14 +113,14 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
         timing: (0..findings.levels_c.len()).filter_map(|at| place::timing(findings, at, reader)).collect(),
         elevation: place::elevation(findings, reader),
         volumes: volumes::volumes(findings, reader),
-        break_even: break_even::break_even(findings, headline, reader),
+        break_even: break_even::break_even(findings, headline, on_top, reader),
         slopes: slopes::slopes(findings, reader),
         cases: slopes::cases(findings, reader),
-        tipping: tipping::tipping(findings, reader),
+        tipping: tipping::tipping(findings, cause(findings, warming), reader),
         years: years::years(findings, cause(findings, warming), reader),
         chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
     };
-    answer.at_a_glance = at_a_glance(findings, headline, &answer, reader);
+    answer.at_a_glance = at_a_glance(findings, headline, &answer, on_top, reader);
     answer
 }
 
@@ -123,6 +129,7 @@ fn at_a_glance(
     findings: &Findings,
     headline: &MeasureFindings,
     answer: &Answer,
+    on_top: &str,
     reader: Reader,
 ) -> Vec<Asked> {
     let at = telling_level(findings);
@@ -141,7 +148,9 @@ fn at_a_glance(
         ("How much water is that?", answer.volumes.iter().cloned().collect()),
         (
             "What would make up for it?",
-            at.and_then(|at| break_even::at(findings, headline, at, reader)).into_iter().collect::<Vec<_>>(),
+            at.and_then(|at| break_even::at(findings, headline, at, on_top, reader))
+                .into_iter()
+                .collect::<Vec<_>>(),
         ),
     ];
     let holds = ("When does what must hold begin to fail?", answer.tipping.clone());

@@ -3,7 +3,10 @@
 use super::super::numbers::{fixed, precision, signed};
 use super::super::reader::Reader;
 use super::telling_level;
-use crate::findings::{Estimate, Findings, INTERACTION_PCT, NamedNode, Slope, Slopes, compound_share_pct};
+use crate::findings::{
+    Crossing, Estimate, Findings, INTERACTION_PCT, NamedNode, Offset, ResponseSurface, Slope, Slopes,
+    compound_share_pct,
+};
 use crate::season::MELT_OUT_DAY;
 
 /// `12.2 ± 0.25 %`: the size of a percentage with its error.
@@ -34,7 +37,34 @@ pub(super) fn slopes(findings: &Findings, reader: Reader) -> Vec<String> {
         words.extend(both(telling, &format!("At {}", reader.level(telling.level_c)), title, reader));
         words.extend(interaction(telling, title, reader));
     }
+    words.extend(surface.offset.as_ref().and_then(|of| offset(of, surface, title, reader)));
     words
+}
+
+/// The warming that an increase of precipitation makes up for.
+fn offset(of: &Offset, surface: &ResponseSurface, title: &str, reader: Reader) -> Option<String> {
+    let more = format!("{} % precipitation alone", signed(of.precipitation_change_pct, 0));
+    match of.warming {
+        Crossing::At { level_c, .. } => {
+            let end = |end: Option<f64>| {
+                end.map_or_else(|| "beyond the grid".to_owned(), |end_c| reader.between_levels_bare(end_c))
+            };
+            let range = of.range.filter(|range| range.q05_c.is_some() || range.q95_c.is_some());
+            let range = range.map_or(String::new(), |range| {
+                format!(" (Monte Carlo, 5–95 %: {} to {})", end(range.q05_c), end(range.q95_c))
+            });
+            Some(format!(
+                "{more} makes up for a warming to about {}{range}: there the median {title} is the reference's.",
+                reader.between_levels(level_c)
+            ))
+        }
+        Crossing::NotReached { up_to_c } => Some(format!(
+            "{more} leaves the median {title} above the reference's up to {}, the warmest of the surface's {} warmings.",
+            reader.level(up_to_c),
+            surface.warmings_c.len()
+        )),
+        Crossing::Unknown => None,
+    }
 }
 
 fn both(at: &Slopes, place: &str, title: &str, reader: Reader) -> Option<String> {

@@ -5,12 +5,12 @@ use super::super::reader::Reader;
 use super::verdict::crossing_range;
 use crate::findings::{Asks, Crossing, Findings, TippingLevel};
 
-/// A sentence a criterion.
-pub(super) fn tipping(findings: &Findings, reader: Reader) -> Vec<String> {
-    findings.tipping_levels.iter().map(|of| one(findings, of, reader)).collect()
+/// A sentence a criterion; `cause` is what the levels do.
+pub(super) fn tipping(findings: &Findings, cause: &str, reader: Reader) -> Vec<String> {
+    findings.tipping_levels.iter().map(|of| one(findings, of, cause, reader)).collect()
 }
 
-fn one(findings: &Findings, of: &TippingLevel, reader: Reader) -> String {
+fn one(findings: &Findings, of: &TippingLevel, cause: &str, reader: Reader) -> String {
     let title = findings.basin.first().map_or("survey-date SWE", |headline| headline.measure.title.as_str());
     let asked = match of.criterion.asks {
         Asks::MedianAtLeast { volume_hm3: Some(volume_hm3), .. } => {
@@ -19,19 +19,27 @@ fn one(findings: &Findings, of: &TippingLevel, reader: Reader) -> String {
         Asks::MedianAtLeast { swe_mm, .. } => {
             format!("{title} of at least {} in half of the years", reader.amount(swe_mm))
         }
-        Asks::LowSnowYearsAtMost { share } => {
-            format!("low-snow years at most {} % of all", trimmed(&fixed(100.0 * share, 1)))
-        }
+        Asks::LowSnowYearsAtMost { share, below_quantile } => format!(
+            "low-snow years, which have less than the reference's {} % quantile, at most {} % of all",
+            trimmed(&fixed(100.0 * below_quantile, 1)),
+            trimmed(&fixed(100.0 * share, 1))
+        ),
     };
     let name = &of.criterion.name;
-    if !of.holds_at_reference {
-        return format!("{name} ({asked}) does not hold even at the reference.");
+    match of.holds_at_reference {
+        Some(true) => {}
+        Some(false) => return format!("{name} ({asked}) does not hold even at the reference."),
+        None => {
+            return format!(
+                "{name} ({asked}) cannot be asked: that quantile is bare ground, and no year has less."
+            );
+        }
     }
     match of.fails {
         Crossing::At { level_c, .. } => {
             let range = crossing_range(findings, of.fails_range, reader);
             format!(
-                "{name} ({asked}) begins to fail at about {} of warming{range}.",
+                "{name} ({asked}) begins to fail at about {} of {cause}{range}.",
                 reader.between_levels(level_c)
             )
         }
@@ -42,7 +50,7 @@ fn one(findings: &Findings, of: &TippingLevel, reader: Reader) -> String {
                     reader.between_levels(level_c)
                 )
             });
-            format!("{name} ({asked}) holds up to {}{may_fail}.", reader.level(up_to_c))
+            format!("{name} ({asked}) holds up to {} of {cause}{may_fail}.", reader.level(up_to_c))
         }
         Crossing::Unknown => {
             format!("At which warming {name} ({asked}) fails cannot be said: no warmer level was run.")

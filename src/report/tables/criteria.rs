@@ -30,16 +30,16 @@ pub(super) fn criteria(found: &[TippingLevel], units: UnitSystem) -> Vec<u8> {
                 let depth = units.depth();
                 ("median at least", depth.suffix, depth.of(swe_mm), depth.of(1.0))
             }
-            Asks::LowSnowYearsAtMost { share } => ("low-snow years at most", "share", share, 1.0),
+            Asks::LowSnowYearsAtMost { share, .. } => ("low-snow years at most", "share", share, 1.0),
         };
         let (word, from_c) = match of.fails {
-            _ if !of.holds_at_reference => ("at the reference", None),
+            _ if of.holds_at_reference == Some(false) => ("at the reference", None),
             Crossing::At { level_c, .. } => ("at", Some(level_c)),
             Crossing::NotReached { .. } => ("not reached", None),
             Crossing::Unknown => ("unknown", None),
         };
         let in_units = |at_c: Option<f64>| optional(at_c.map(|at_c| units.warming().of(at_c)));
-        let range = of.fails_range.filter(|_| of.holds_at_reference);
+        let range = of.fails_range.filter(|_| of.holds_at_reference == Some(true));
         for level in &of.levels {
             let mut row =
                 vec![of.criterion.name.clone(), asks.to_owned(), unit.to_owned(), limit.to_string()];

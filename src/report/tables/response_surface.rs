@@ -66,7 +66,7 @@ pub(super) fn break_even_curve(surface: &ResponseSurface, units: UnitSystem) -> 
     write(&mut writer, &[&[warming], header.map(str::to_owned).as_slice()].concat());
     for point in &surface.break_even {
         let CurvePoint { warming_c, precipitation_change_pct, stays, range_pct } = point;
-        let [q05, q95] = [0, 1].map(|end| optional(range_pct.map(|range| range[end])));
+        let [q05, q95] = [0, 1].map(|end| optional(range_pct.and_then(|range| range[end])));
         let stays = stays.map_or("", |stays| if stays == Stays::Below { "below" } else { "above" });
         write(
             &mut writer,

@@ -1,5 +1,6 @@
 //! `[[findings.cases]]`: changes of climate with a name, such as the bounding cases of a plan.
 
+use super::super::degrees::{Degrees, FAHRENHEIT_PER_CELSIUS, typed_degrees};
 use super::super::section::Section;
 use crate::fault::Fault;
 use crate::findings::{Change, ChangeOrigin, NamedChange};
@@ -11,8 +12,6 @@ pub(super) const LONGEST_NAME: usize = 40;
 pub(super) const WARMING_C: RangeInclusive<f64> = -10.0..=15.0;
 /// What can be meant, percent.
 pub(super) const PRECIPITATION_PCT: RangeInclusive<f64> = -90.0..=200.0;
-/// A difference of 1 degC is one of so many degF.
-pub(super) const FAHRENHEIT_PER_CELSIUS: f64 = 1.8;
 
 /// Reads all cases; nothing where one has a fault.
 pub(super) fn read(sections: Vec<Section<'_>>) -> Option<Vec<NamedChange>> {
@@ -24,26 +23,14 @@ pub(super) fn read(sections: Vec<Section<'_>>) -> Option<Vec<NamedChange>> {
 
 fn read_case(mut section: Section<'_>, names: &mut Vec<String>) -> Option<NamedChange> {
     let name = read_name(&mut section, names);
-    let warming_c = match [section.has("warming_c"), section.has("warming_f")] {
-        [true, true] => {
-            section.knows("warming_c");
-            section.knows("warming_f");
-            section.fault(Fault::key(
-                section.path_of("warming_f"),
-                "warming_f beside warming_c",
-                "one of the two",
-                "take one of them out",
-            ));
-            None
-        }
-        [false, true] => {
-            section.knows("warming_c");
+    let warming_c = match typed_degrees(&mut section, "warming_c", "warming_f") {
+        Degrees::Both => None,
+        Degrees::Fahrenheit => {
             let range = WARMING_C.start() * FAHRENHEIT_PER_CELSIUS..=WARMING_C.end() * FAHRENHEIT_PER_CELSIUS;
             let typed = section.number_in("warming_f", range, "degF above the record");
             typed.map(|typed| typed / FAHRENHEIT_PER_CELSIUS)
         }
-        [_, false] => {
-            section.knows("warming_f");
+        Degrees::Neither | Degrees::Celsius => {
             section.required_number("warming_c", WARMING_C, "degC above the record, or warming_f")
         }
     };

@@ -28,33 +28,41 @@ const LOW_SNOW: &str = "low_snow_years_at_most";
 const KEYS: [&str; 5] = [MM, INCHES, HM3, ACRE_FEET, LOW_SNOW];
 
 impl CriterionTyped {
-    /// The criterion in a basin of so many km2: 1 hm3 over 1 km2 is 1 m of water.
-    pub(super) fn of(&self, area_km2: f64) -> Criterion {
+    /// The criterion in a basin of so many km2, where a low-snow year lies below that quantile: 1 hm3 over 1 km2 is 1 m of water.
+    pub(super) fn of(&self, area_km2: f64, low_snow_below_quantile: f64) -> Criterion {
         let asks = match self.asks {
             AsksTyped::SweMm(swe_mm) => Asks::MedianAtLeast { swe_mm, volume_hm3: None },
             AsksTyped::VolumeHm3(hm3) => {
                 Asks::MedianAtLeast { swe_mm: 1000.0 * hm3 / area_km2, volume_hm3: Some(hm3) }
             }
-            AsksTyped::LowSnowShare(share) => Asks::LowSnowYearsAtMost { share },
+            AsksTyped::LowSnowShare(share) => {
+                Asks::LowSnowYearsAtMost { share, below_quantile: low_snow_below_quantile }
+            }
         };
         Criterion { name: self.name.clone(), asks }
     }
 }
 
-/// Reads all criteria; nothing where one has a fault.
-pub(super) fn read(sections: Vec<Section<'_>>) -> Option<Vec<CriterionTyped>> {
+/// Reads all criteria; nothing where one has a fault. A low-snow year lies below that quantile of the reference.
+pub(super) fn read(sections: Vec<Section<'_>>, low_snow_below_quantile: f64) -> Option<Vec<CriterionTyped>> {
     let mut names = Vec::new();
-    let criteria: Vec<Option<CriterionTyped>> =
-        sections.into_iter().map(|section| read_criterion(section, &mut names)).collect();
+    let criteria: Vec<Option<CriterionTyped>> = sections
+        .into_iter()
+        .map(|section| read_criterion(section, &mut names, low_snow_below_quantile))
+        .collect();
     criteria.into_iter().collect()
 }
 
-fn read_criterion(mut section: Section<'_>, names: &mut Vec<String>) -> Option<CriterionTyped> {
+fn read_criterion(
+    mut section: Section<'_>,
+    names: &mut Vec<String>,
+    low_snow_below_quantile: f64,
+) -> Option<CriterionTyped> {
     let name = read_name(&mut section, names);
     let typed: Vec<&'static str> = KEYS.into_iter().filter(|key| section.has(key)).collect();
     KEYS.into_iter().for_each(|key| section.knows(key));
     let asks = match typed.as_slice() {
-        [key] => read_asks(&mut section, key),
+        [key] => read_asks(&mut section, key, low_snow_below_quantile),
         _ => {
             let found =
                 if typed.is_empty() { "nothing that is to hold".to_owned() } else { typed.join(" beside ") };
@@ -71,7 +79,11 @@ fn read_criterion(mut section: Section<'_>, names: &mut Vec<String>) -> Option<C
     Some(CriterionTyped { name: name?, asks: asks? })
 }
 
-fn read_asks(section: &mut Section<'_>, key: &'static str) -> Option<AsksTyped> {
+fn read_asks(
+    section: &mut Section<'_>,
+    key: &'static str,
+    low_snow_below_quantile: f64,
+) -> Option<AsksTyped> {
     let amount = |section: &mut Section<'_>, most: f64, mend: &str| section.number_in(key, 0.0..=most, mend);
     match key {
         MM => amount(section, 1e5, "mm of water over the basin").map(AsksTyped::SweMm),
@@ -86,6 +98,15 @@ fn read_asks(section: &mut Section<'_>, key: &'static str) -> Option<AsksTyped> 
         }
         _ => {
             let share = section.number_in(key, 0.0..=1.0, "a share of years: 0.2 is 1 in 5")?;
+            if share < low_snow_below_quantile {
+                section.unlikely(
+                    key,
+                    format!(
+                        "{share} is less than the share of low-snow years at the reference, {low_snow_below_quantile} by \
+                         findings.low_snow.below_quantile: it does not hold even there"
+                    ),
+                );
+            }
             Some(AsksTyped::LowSnowShare(share))
         }
     }

@@ -1,7 +1,8 @@
 //! `[findings.projections]`: a file of projections that are laid over the response surface, a line each.
 
+use super::super::degrees::FAHRENHEIT_PER_CELSIUS;
 use super::super::section::Section;
-use super::cases::{FAHRENHEIT_PER_CELSIUS, LONGEST_NAME, PRECIPITATION_PCT, WARMING_C};
+use super::cases::{LONGEST_NAME, PRECIPITATION_PCT, WARMING_C};
 use crate::fault::Fault;
 use crate::findings::{Change, ChangeOrigin, NamedChange};
 use crate::table::{Format, Table, Tally};

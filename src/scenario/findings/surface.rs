@@ -1,5 +1,6 @@
 //! `[findings.surface]`: the grid of the response surface.
 
+use super::super::degrees::{Degrees, FAHRENHEIT_PER_CELSIUS, typed_degrees};
 use super::super::section::Section;
 use crate::fault::Fault;
 
@@ -16,8 +17,6 @@ pub struct SurfaceTyped {
 
 /// Nodes in a row or a column.
 const MOST: usize = 41;
-/// A change of 1 degC is one of so many degF.
-const FAHRENHEIT_PER_CELSIUS: f64 = 1.8;
 
 pub(super) fn read(mut section: Section<'_>) -> Option<SurfaceTyped> {
     let warmings_c = read_warmings(&mut section);
@@ -39,36 +38,21 @@ pub(super) fn read(mut section: Section<'_>) -> Option<SurfaceTyped> {
 }
 
 fn read_warmings(section: &mut Section<'_>) -> Option<Vec<f64>> {
-    match [section.has("warming_c"), section.has("warming_f")] {
-        [false, false] => {
-            section.knows("warming_c");
-            section.knows("warming_f");
+    match typed_degrees(section, "warming_c", "warming_f") {
+        Degrees::Neither => {
             section.default("warming_c", "-2 to 6 in steps of 1");
             Some((-2..=6).map(f64::from).collect())
         }
-        [true, true] => {
-            section.knows("warming_c");
-            section.knows("warming_f");
-            section.fault(Fault::key(
-                section.path_of("warming_f"),
-                "warming_f beside warming_c",
-                "one of the two",
-                "take one of them out",
-            ));
-            None
+        Degrees::Celsius => {
+            let typed = section.numbers("warming_c")?;
+            check(section, "warming_c", typed, [-10.0, 15.0], "degC")
         }
-        [in_celsius, _] => {
-            section.knows("warming_c");
-            section.knows("warming_f");
-            let key = if in_celsius { "warming_c" } else { "warming_f" };
-            let typed = section.numbers(key)?;
-            if in_celsius {
-                check(section, key, typed, [-10.0, 15.0], "degC")
-            } else {
-                let typed = check(section, key, typed, [-18.0, 27.0], "degF")?;
-                Some(typed.into_iter().map(|typed| typed / FAHRENHEIT_PER_CELSIUS).collect())
-            }
+        Degrees::Fahrenheit => {
+            let typed = section.numbers("warming_f")?;
+            let typed = check(section, "warming_f", typed, [-18.0, 27.0], "degF")?;
+            Some(typed.into_iter().map(|typed| typed / FAHRENHEIT_PER_CELSIUS).collect())
         }
+        Degrees::Both => None,
     }
 }
 
