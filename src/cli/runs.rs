@@ -13,7 +13,7 @@ use super::surface::warmed;
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, SweBins, Watch, run, run_records};
 use crate::findings::{
     ByYear, ByYearQuestions, Findings, OtherChange, ParameterSpread, Questions, REALIZATIONS_OF_A_RECORD,
-    RESAMPLED_RECORDS, Refit, Runs, TIMES_ASSUMED, answer, warm_year_biases,
+    RESAMPLED_RECORDS, RecordOdds, Refit, RefitOdds, Runs, TIMES_ASSUMED, answer, warm_year_biases,
 };
 use crate::perturb::{Generator, MeanChange, TemperatureHeld};
 use crate::season::Measures;
@@ -79,9 +79,12 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     let of_records = Plan { realizations: of_a_record, ..plan };
     let of_records = run_records(&of_records, &of_each_record, progress).map_err(halted)?;
     let refit = |seasons: BasinSeasons| {
-        Refit::of(&seasons, ready.drawn_from.years.len(), &warming.levels_c, warming.reference)
+        let (years, reference) = (ready.drawn_from.years.len(), warming.reference);
+        let below_quantile = scenario.findings.low_snow.below_quantile;
+        let odds = RefitOdds::of(&seasons, years, reference, below_quantile);
+        (Refit::of(&seasons, years, &warming.levels_c, reference), odds)
     };
-    let refits: Vec<Refit> = of_records.map(refit).collect();
+    let (refits, refit_odds): (Vec<Refit>, Vec<Option<RefitOdds>>) = of_records.map(refit).unzip();
     let of_sets = match &ready.parameter_sets {
         Some(sets) => Some(run_sets(ready, sets, &plan, &study.basin, progress).map_err(halted)?),
         None => None,
@@ -135,6 +138,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         by_year,
         break_even: Some(break_even),
         parameter_spread,
+        record_odds: RecordOdds::of(&refit_odds, &warming.levels_c, warming.reference),
         rule_panel,
         warm_year_biases,
         comparisons,

@@ -7,6 +7,7 @@ use super::measure::{Asked, Found, MeasureFindings};
 use super::parameter_spread::ParameterSpread;
 use super::places::Places;
 use super::record::RecordFindings;
+use super::record_odds::RecordOdds;
 use super::record_range::{RecordRange, Refit};
 use super::resample::Resamples;
 use super::rule_panel::RulePanel;
@@ -87,6 +88,9 @@ pub struct Findings {
     /// How far the answer hangs on the parameters. Found by runs of its own, too.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub parameter_spread: Option<ParameterSpread>,
+    /// Low-snow odds and low years in a row over resampled records; whoever has run them adds them.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub record_odds: Option<RecordOdds>,
     /// The headline under other published rules. Found by runs of its own, too.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub rule_panel: Option<RulePanel>,
@@ -172,6 +176,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         surface: None,
         tipping_levels: tipping_levels.collect(),
         parameter_spread: None,
+        record_odds: None,
         rule_panel: None,
         warm_year_biases: Vec::new(),
         by_year: None,

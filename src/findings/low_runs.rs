@@ -8,7 +8,7 @@ use serde::Serialize;
 /// A low year of a run lies at or below this quantile of the reference's single years.
 pub const RUNS_AT_OR_BELOW_QUANTILE: f64 = 0.3;
 /// Lengths of runs that are asked for, years.
-const RUN_YEARS: [usize; 3] = [2, 3, 5];
+pub(super) const RUN_YEARS: [usize; 3] = [2, 3, 5];
 /// A run comes first where this share of the realizations holds one.
 const FIRST_AT_SHARE: f64 = 0.5;
 
@@ -100,7 +100,7 @@ impl LowRuns {
 }
 
 /// The least limit at or below which so many years in a row lie.
-fn least_limit(years: &[f64], run: usize) -> f64 {
+pub(super) fn least_limit(years: &[f64], run: usize) -> f64 {
     let largest = |window: &[f64]| window.iter().copied().fold(f64::NEG_INFINITY, f64::max);
     years.windows(run).map(largest).fold(f64::INFINITY, f64::min)
 }

@@ -35,6 +35,7 @@ mod quantile;
 mod ranged;
 mod record;
 mod record_coincidence;
+mod record_odds;
 mod record_range;
 mod replayed_years;
 mod resample;
@@ -96,6 +97,7 @@ pub use quantile::{quantile, sorted};
 pub use ranged::Ranged;
 pub use record::{OwnYear, RecordFindings, RecordQuestions};
 pub use record_coincidence::{Counted, PeriodCoincidence, PeriodsCompared, RecordCoincidence, RecordValues};
+pub use record_odds::{RecordOdds, RecordOddsLevel, RecordRuns, RefitOdds};
 pub use record_range::{
     REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, Range, RecordRange, RecordRangeLevel, Refit,
 };

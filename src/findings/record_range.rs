@@ -154,7 +154,7 @@ impl RefitMeasure {
 impl RecordRange {
     /// Whether there are years and realizations enough for the ranges to tell of the record.
     pub fn is_telling(&self) -> bool {
-        self.record_years >= LEAST_RECORD_YEARS && self.realizations >= LEAST_REALIZATIONS
+        is_telling(self.record_years, self.realizations)
     }
 
     /// The ranges of one measure over all resampled records; nothing where there are fewer than two.
@@ -193,7 +193,13 @@ impl RecordRange {
     }
 }
 
-fn range(numbers: impl Iterator<Item = Option<f64>>) -> Option<Range> {
+/// Whether so many years of a record and realizations of each are enough.
+pub(super) fn is_telling(record_years: usize, realizations: usize) -> bool {
+    record_years >= LEAST_RECORD_YEARS && realizations >= LEAST_REALIZATIONS
+}
+
+/// From 5 to 95 % over numbers; nothing where one is missing.
+pub(super) fn range(numbers: impl Iterator<Item = Option<f64>>) -> Option<Range> {
     let numbers = sorted(numbers.collect::<Option<Vec<f64>>>()?);
     let [q05, q95] = [0.05, 0.95].map(|share| quantile(&numbers, share));
     Some(Range { q05, q95 })

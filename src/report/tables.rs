@@ -14,6 +14,7 @@ mod ground;
 mod lines;
 mod measures;
 mod parameter_spread;
+mod record_odds;
 mod record_range;
 mod record_years;
 mod replayed_years;
@@ -43,6 +44,9 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     add("driest-and-wettest", driest_and_wettest::driest_and_wettest(findings, units));
     add("yardsticks", yardsticks::yardsticks(findings, units));
     add("record-range", record_range::record_range(findings, units));
+    if let Some(found) = &findings.record_odds {
+        add("record-odds", record_odds::record_odds(found, units));
+    }
     for (name, table) in findings.by_year.iter().flat_map(|found| by_year::by_year(found, units)) {
         add(name, table);
     }

@@ -5,6 +5,7 @@ mod chance;
 mod how_sure;
 mod parameters;
 mod place;
+mod record_odds;
 mod slopes;
 mod tipping;
 mod verdict;
@@ -117,7 +118,10 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
         slopes: slopes::slopes(findings, reader),
         cases: slopes::cases(findings, reader),
         tipping: tipping::tipping(findings, cause(findings, warming), reader),
-        years: years::years(findings, cause(findings, warming), reader),
+        years: years::years(findings, cause(findings, warming), reader)
+            .into_iter()
+            .chain(record_odds::record_odds(findings, reader))
+            .collect(),
         chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
     };
     answer.at_a_glance = at_a_glance(findings, headline, &answer, on_top, reader);
