@@ -11,6 +11,8 @@ mod cells;
 mod chance;
 mod coincidence;
 mod counts;
+#[cfg(test)]
+mod coverage;
 mod crossing;
 mod crossover;
 mod detection;
