@@ -115,6 +115,8 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             let (parameter_sets, sets_file) = parameter_sets.unzip();
             files.extend(sets_file);
             unlikely.extend(parameter_sets.iter().filter_map(ParameterSets::unlikely));
+            let panel = scenario.findings.rule_panel;
+            unlikely.extend(panel.and_then(|panel| panel.unlikely(scenario.warming.levels_c.len())));
             let mut named_changes = scenario.findings.cases.clone();
             let (projections, projections_file) = projections.unzip();
             files.extend(projections_file);

@@ -33,7 +33,9 @@ pub(super) fn run_sets(
     let kept: Vec<usize> = all.iter().enumerate().filter(is_kept).map(|(at, _)| at).collect();
     let plan = Plan { realizations: sets.realizations, ..*plan };
     let one = |parameters: &Parameters| -> Result<Array3<f64>, Halt> {
-        let seasons = run_set(&ready.with(parameters), &plan, watch)?;
+        let of_set = ready.with(parameters);
+        let made = of_set.recipe().of(&of_set.drawn_from);
+        let seasons = run_set(&of_set, &*made, &plan, watch)?;
         Ok(seasons.periods.select(Axis(1), &kept))
     };
     let periods = sets.parameters.iter().map(one).collect::<Result<_, _>>()?;
@@ -42,16 +44,19 @@ pub(super) fn run_sets(
     Ok(SetRuns { measures: kept.iter().map(|at| all[*at].clone()).collect(), periods, own })
 }
 
-/// The basin's seasons with another set's snow and weather: `plan`'s groups are made anew.
+/// The basin's seasons with another set's snow, and weather that is corrected for catch as the set does it: `plan`'s groups are made anew.
 ///
 /// # Errors
 /// Those of a run.
-pub(super) fn run_set(of_set: &Ready, plan: &Plan<'_>, watch: &dyn Watch) -> Result<BasinSeasons, Halt> {
+pub(super) fn run_set(
+    of_set: &Ready,
+    made: &dyn Generator,
+    plan: &Plan<'_>,
+    watch: &dyn Watch,
+) -> Result<BasinSeasons, Halt> {
     let groups = LevelGroups::of(of_set);
     let lanes = groups.lanes(&groups.changes);
-    let recipe = of_set.recipe();
-    let made = recipe.of(&of_set.drawn_from);
-    let weather = groups.weather(&*made);
+    let weather = groups.weather(made);
     let changed = groups.changed(&weather);
     let of_groups: Vec<LevelGroup<'_>> =
         lanes.iter().zip(&changed).map(|(lanes, generator)| LevelGroup { lanes, generator }).collect();

@@ -15,7 +15,7 @@ use crate::perturb::{MonthlyChange, Recipe};
 use crate::report::{FittedFrom, Input, Origin, Reader, SetsFrom};
 use crate::scenario::{Fitted, ParameterSets, Scenario};
 use crate::season::Measures;
-use crate::snow::{LaneSpec, Lanes, OpenLedger, StationPhase, correct_catch};
+use crate::snow::{Catch, LaneSpec, Lanes, OpenLedger, StationPhase, correct_catch};
 use crate::weather::{Record, Series};
 use std::path::Path;
 
@@ -167,6 +167,12 @@ impl Ready {
             all_mm += amount_mm;
         }
         if all_mm > 0.0 { snow_mm / all_mm } else { 0.0 }
+    }
+
+    /// How what fell is told from what the gauge caught.
+    pub fn catch(&self) -> Catch {
+        let phase = StationPhase::of(&self.scenario.snow, self.scenario.weather.station_elevation_m);
+        Catch { phase, multiplier: self.scenario.weather.gauge_multiplier }
     }
 
     /// How the study's weather is made.

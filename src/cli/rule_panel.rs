@@ -1,4 +1,4 @@
-//! The headline again under other published rules, each tuned on the record's own years first.
+//! The headline again under other rules, each tuned on the record's own years first.
 
 use super::parameter_sets::run_set;
 use super::progress::Progress;
@@ -6,8 +6,10 @@ use super::ready::Ready;
 use crate::ensemble::{BasinSeasons, Halt, Plan, RecordRun, Silent, Watch};
 use crate::findings::{Fit, PanelRule, Rule, RulePanel, RuleRuns, Tuned, quantile, retuned, sorted, tune};
 use crate::fit::Parameters;
+use crate::perturb::Generator;
 use crate::report::numbers::counted;
 use crate::season::{Kind, MELT_OUT_DAY, Measure};
+use crate::snow::CaughtAnew;
 use ndarray::{Array3, Axis, Slice};
 use rayon::prelude::*;
 
@@ -28,7 +30,9 @@ pub(super) fn rule_panel(
     own: &BasinSeasons,
     progress: &Progress,
 ) -> Result<Option<RulePanel>, Halt> {
-    let Some(typed) = ready.scenario.findings.rule_panel else { return Ok(None) };
+    let warming = &ready.scenario.warming;
+    let asked = ready.scenario.findings.rule_panel.filter(|_| warming.levels_c.len() > 1);
+    let Some(typed) = asked else { return Ok(None) };
     let realizations = typed.realizations_of(plan.realizations);
     let all = plan.measures.list();
     let kept: Vec<usize> = (0..all.len()).filter(|at| *at == 0 || all[*at].name == MELT_OUT_DAY).collect();
@@ -57,11 +61,12 @@ pub(super) fn rule_panel(
         rule: in_force(Rule::StudysOwn, untouched, &parameters),
         periods: own.periods.select(Axis(1), &kept).slice_axis(Axis(2), same).to_owned(),
     }];
+    // Made once for all rules, so that rows differ by the rule and not by what a fit makes of other amounts.
+    let drawn = ready.recipe().of(&ready.drawn_from);
     for (rule, tuned, parameters) in &tuned {
-        let periods = periods(ready, parameters, &plan, &kept, progress)?;
+        let periods = periods(&ready.with(parameters), (ready, &*drawn), &plan, &kept, progress)?;
         runs.push(RuleRuns { rule: in_force(*rule, *tuned, parameters), periods });
     }
-    let warming = &ready.scenario.warming;
     let levels = (warming.levels_c.as_slice(), warming.reference);
     Ok(RulePanel::of(&measures, &runs, ready.weather.years.len(), levels, ready.scenario.seed))
 }
@@ -77,10 +82,13 @@ fn in_force(rule: Rule, tuned: Tuned, parameters: &Parameters) -> PanelRule {
     }
 }
 
-/// Period values of the basin with these parameters, `[level][measure][realization]`. They do not count on the bar, which has ended.
+/// Period values of the basin by a rule, `[level][measure][realization]`. They do not count on the bar, which has ended.
+///
+/// Years of the record are taken as the rule corrects them. Weather that is drawn day by day is the study's own, `drawn`, each of its days
+/// caught anew.
 fn periods(
-    ready: &Ready,
-    parameters: &Parameters,
+    of_rule: &Ready,
+    (own, drawn): (&Ready, &dyn Generator),
     plan: &Plan<'_>,
     kept: &[usize],
     progress: &Progress,
@@ -88,7 +96,14 @@ fn periods(
     if progress.wants_stop() {
         return Err(Halt::Stopped);
     }
-    let seasons = run_set(&ready.with(parameters), plan, &Silent)?;
+    let takes_years = drawn.drawn(0, 1).is_some();
+    let of_years = takes_years.then(|| of_rule.recipe().of(&of_rule.drawn_from));
+    let caught_anew = CaughtAnew { generator: drawn, before: own.catch(), after: of_rule.catch() };
+    let made: &dyn Generator = match &of_years {
+        Some(of_years) => &**of_years,
+        None => &caught_anew,
+    };
+    let seasons = run_set(of_rule, made, plan, &Silent)?;
     Ok(seasons.periods.select(Axis(1), kept))
 }
 

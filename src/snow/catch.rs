@@ -80,6 +80,11 @@ impl StationPhase {
             .map_or(mean_c, |kpa| wet_bulb_c(mean_c, series.relative_humidity_pct[day], kpa));
         self.rule.snow_fraction(told_by_c)
     }
+
+    /// What fell over what the gauge caught, `f*k_snow + (1 - f)*k_rain`, of a day counted from the series' first.
+    pub(super) fn catch(&self, series: &Series, day: usize, multiplier: GaugeMultiplier) -> f64 {
+        caught(self.snow_fraction(series, day), multiplier.rain, multiplier.snow)
+    }
 }
 
 /// Corrects a record's precipitation for catch, once and before any perturbation:
@@ -89,7 +94,6 @@ impl StationPhase {
 /// not also shrink the day's total through the multiplier.
 pub fn correct_catch(series: &mut Series, multiplier: GaugeMultiplier, phase: StationPhase) {
     for day in 0..series.precipitation_mm.len() {
-        let snow = phase.snow_fraction(series, day);
-        series.precipitation_mm[day] *= caught(snow, multiplier.rain, multiplier.snow);
+        series.precipitation_mm[day] *= phase.catch(series, day, multiplier);
     }
 }

@@ -7,6 +7,7 @@
 
 mod block;
 mod catch;
+mod caught_anew;
 mod days;
 mod degrees;
 mod engine;
@@ -26,6 +27,7 @@ mod wet_bulb;
 
 pub use block::{BARE_MM, Detail, YearBlock, cover};
 pub use catch::{GaugeMultiplier, StationPhase, correct_catch};
+pub use caught_anew::{Catch, CaughtAnew};
 pub use degrees::{diurnal_degrees, mean_degrees};
 pub use engine::{Engine, Path, Snow};
 pub use lanes::{LaneSpec, Lanes, ROW_MULTIPLE};

@@ -1,23 +1,33 @@
-//! `[findings.rule_panel]`: the headline again under other published rules of the snow.
+//! `[findings.rule_panel]`: the headline again under other rules of the snow.
 
 use super::super::section::Section;
+use crate::fault::Unlikely;
 
-/// The key of how many realizations it runs.
+/// The key of how many realizations it runs at most.
 pub const REALIZATIONS_KEY: &str = "findings.rule_panel.realizations";
-/// Realizations of each rule where none are stated: a shift's median is then known about as well as its third figure.
-pub const REALIZATIONS: u32 = 100;
+const TABLE: &str = "findings.rule_panel";
 
 /// The panel as typed.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub struct RulePanelTyped {
-    /// Realizations of each rule, where stated.
+    /// Realizations of each rule at most, where stated.
     pub realizations: Option<u32>,
 }
 
 impl RulePanelTyped {
-    /// Realizations of each rule in a study of so many.
+    /// Realizations of each rule in a study of so many: all, unless fewer are stated, so that the study's own row is the study's answer.
     pub fn realizations_of(self, count: u32) -> u32 {
-        self.realizations.unwrap_or(REALIZATIONS).min(count)
+        self.realizations.map_or(count, |stated| stated.min(count))
+    }
+
+    /// Among so many levels, the reference one of them, whether there is one to shift to.
+    pub fn unlikely(self, levels: usize) -> Option<Unlikely> {
+        (levels < 2).then(|| {
+            Unlikely::new(
+                TABLE,
+                "there is no level but the reference, so that no rule has a shift and nothing is run: state another in warming",
+            )
+        })
     }
 }
 
@@ -29,11 +39,10 @@ pub(super) fn read(findings: &mut Section<'_>) -> Option<RulePanelTyped> {
     }
     let mut section = findings.section("rule_panel");
     let realizations = if section.has("realizations") {
-        let stated = section.whole_in("realizations", 2..=100_000, u64::from(REALIZATIONS));
-        stated.map(|realizations| realizations as u32)
+        section.whole_in("realizations", 2..=100_000, 100).map(|realizations| realizations as u32)
     } else {
         section.knows("realizations");
-        section.default("realizations", "100, or all of the study's where it has fewer");
+        section.default("realizations", "all of the study's");
         None
     };
     section.finish();
