@@ -33,6 +33,7 @@ pub(super) fn rule_panel(
     let warming = &ready.scenario.warming;
     let asked = ready.scenario.findings.rule_panel.filter(|_| warming.levels_c.len() > 1);
     let Some(typed) = asked else { return Ok(None) };
+    let of_study = plan.realizations as usize;
     let realizations = typed.realizations_of(plan.realizations);
     let all = plan.measures.list();
     let kept: Vec<usize> = (0..all.len()).filter(|at| *at == 0 || all[*at].name == MELT_OUT_DAY).collect();
@@ -68,7 +69,8 @@ pub(super) fn rule_panel(
         runs.push(RuleRuns { rule: in_force(*rule, *tuned, parameters), periods });
     }
     let levels = (warming.levels_c.as_slice(), warming.reference);
-    Ok(RulePanel::of(&measures, &runs, ready.weather.years.len(), levels, ready.scenario.seed))
+    let counts = (of_study, ready.weather.years.len());
+    Ok(RulePanel::of(&measures, &runs, counts, levels, ready.scenario.seed))
 }
 
 fn in_force(rule: Rule, tuned: Tuned, parameters: &Parameters) -> PanelRule {

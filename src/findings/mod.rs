@@ -106,8 +106,9 @@ pub use record_range::{
 pub use replayed_years::{ReplayedLevel, ReplayedYear, ReplayedYears};
 pub use resample::{Estimate, Resamples};
 pub use rule_panel::{
-    Fit, LevelOfRule, LevelOverRules, MELT_OUT_TOLERANCE_DAYS, MeasureByRule, OfRule, PEAK_TOLERANCE_PCT,
-    PanelRule, Rule, RulePanel, RuleRuns, Tuned, Weight, retuned, tune,
+    FACTOR_BOUNDS, Fit, LevelOfRule, LevelOverRules, MELT_OUT_TOLERANCE_DAYS, MeasureByRule, OfRule,
+    OutweighsOverRules, PEAK_TOLERANCE_PCT, PanelRule, RangeOverRules, Rule, RulePanel, RuleRuns, Tuned,
+    Weight, is_at_bound, retuned, tune,
 };
 pub use shift::{Shift, percent_change};
 pub use snow_drought::{SnowDroughtLevel, SnowDroughts};

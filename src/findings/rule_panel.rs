@@ -1,17 +1,18 @@
-//! The headline under other published rules: how much of the answer is the model's choice.
+//! The headline under other rules: how much of the answer is the model's choice.
 //!
-//! Every rule is first tuned to the study's own snow of the record, so that none differs by a worse fit; one that cannot be is shown and
-//! left out of the ranges.
+//! Every rule is first tuned to the study's own snow of the record, so that none differs by a worse fit; one that cannot be is named and
+//! stands in no range.
 
+mod over_rules;
 mod rule;
 mod tuning;
 
+pub use over_rules::{LevelOverRules, OutweighsOverRules, RangeOverRules, Weight};
 pub use rule::{Rule, retuned};
-pub use tuning::{Fit, MELT_OUT_TOLERANCE_DAYS, PEAK_TOLERANCE_PCT, Tuned, tune};
+pub use tuning::{FACTOR_BOUNDS, Fit, MELT_OUT_TOLERANCE_DAYS, PEAK_TOLERANCE_PCT, Tuned, is_at_bound, tune};
 
-use super::crossing::Crossing;
+use super::crossing::{Crossing, CrossingRange};
 use super::measure::{Asked, MeasureFindings};
-use super::parameter_spread::OverSets;
 use super::resample::{Estimate, Resamples};
 use super::shift::Shift;
 use super::spread::Spread;
@@ -19,9 +20,6 @@ use super::yardstick::Levels;
 use crate::season::Measure;
 use ndarray::{Array3, Axis};
 use serde::Serialize;
-
-/// A ratio this many Monte Carlo errors from 1 or nearer tells nothing: the ends of a 90 % interval of a normal.
-const ERRORS: f64 = 1.645;
 
 /// Some realizations under every level by one rule.
 #[derive(Debug, Clone, PartialEq)]
@@ -55,14 +53,20 @@ pub struct PanelRule {
 pub struct RulePanel {
     /// Realizations of each rule, the first of the study.
     pub realizations: usize,
+    /// Realizations of the study.
+    pub realizations_of_study: usize,
     /// Years of the record that rules were tuned on.
     pub years_of_record: usize,
     /// What they were tuned to: the study's own.
     pub target: Fit,
+    /// Whether the target has no melt-out to tune to, so that the peak alone ties a rule down.
+    pub is_tuned_to_peak_alone: bool,
     /// How near counts as tuned, percent of the peak.
     pub peak_tolerance_pct: f64,
     /// How near counts as tuned, days of melt-out.
     pub melt_out_tolerance_days: f64,
+    /// Least and greatest factor that either search may come to.
+    pub factor_bounds: [f64; 2],
     /// How a ratio's 90 % interval is made.
     pub interval: &'static str,
     /// Rules beside the study's own.
@@ -82,7 +86,9 @@ pub struct MeasureByRule {
     pub measure: Measure,
     /// In the order of the rules.
     pub rules: Vec<OfRule>,
-    /// One entry a level but the reference: the rules that were tuned, the study's own among them.
+    /// From which warming on the shift outweighs the spread, over the rules that were tuned, the study's own among them.
+    pub outweighs: OutweighsOverRules,
+    /// One entry a level but the reference: the same rules.
     pub levels: Vec<LevelOverRules>,
 }
 
@@ -93,6 +99,8 @@ pub struct OfRule {
     pub precipitation_spread: Option<Spread>,
     /// From which warming on the shift outweighs it.
     pub outweighs: Crossing,
+    /// Monte Carlo range of that warming.
+    pub outweighs_range: Option<CrossingRange>,
     /// One entry a level but the reference.
     pub levels: Vec<LevelOfRule>,
 }
@@ -112,48 +120,21 @@ pub struct LevelOfRule {
     pub weight: Weight,
 }
 
-/// Whether a shift outweighs a spread.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
-#[serde(rename_all = "snake_case")]
-pub enum Weight {
-    /// It does.
-    Outweighs,
-    /// It does not.
-    DoesNotOutweigh,
-    /// The ratio's interval holds 1, or there is no ratio.
-    CannotTell,
-}
-
-/// A level over the rules that were tuned.
-#[derive(Debug, Clone, PartialEq, Serialize)]
-pub struct LevelOverRules {
-    /// The level, degC.
-    pub level_c: f64,
-    /// Median shifts.
-    pub shift: Option<OverSets>,
-    /// Percent changes.
-    pub percent_change: Option<OverSets>,
-    /// Ratios of signal to spread.
-    pub signal_to_spread: Option<OverSets>,
-    /// Places of the rules that say the opposite of the study's own.
-    pub against: Vec<usize>,
-    /// Places of those that cannot tell.
-    pub cannot_tell: Vec<usize>,
-}
-
 impl RulePanel {
-    /// Puts the questions to the runs, the study's own first; none without it or without another.
+    /// Puts the questions to the runs of a study with so many realizations, the study's own first; none without it, without another, or
+    /// without a level to shift to.
     pub fn of(
         measures: &[Measure],
         runs: &[RuleRuns],
-        years_of_record: usize,
+        (realizations_of_study, years_of_record): (usize, usize),
         (levels_c, reference): (&[f64], usize),
         seed: u64,
     ) -> Option<Self> {
-        let own = runs.first().filter(|_| runs.len() > 1)?;
+        let own = runs.first().filter(|_| runs.len() > 1 && levels_c.len() > 1)?;
         let realizations = own.periods.len_of(Axis(2));
         let resamples = Resamples::new(seed, realizations);
         let levels = Levels { levels_c, reference };
+        let is_tuned: Vec<bool> = runs.iter().map(|runs| runs.rule.tuned.is_tuned).collect();
         let of_measure = |(at, measure): (usize, &Measure)| {
             let of_rule = |runs: &RuleRuns| {
                 let asked = Asked {
@@ -167,20 +148,27 @@ impl RulePanel {
                 OfRule::of(&asked.find(levels, &resamples).findings, reference)
             };
             let rules: Vec<OfRule> = runs.iter().map(of_rule).collect();
-            let is_tuned: Vec<bool> = runs.iter().map(|runs| runs.rule.tuned.is_tuned).collect();
-            let levels = (0..levels_c.len().saturating_sub(1))
-                .filter_map(|at| LevelOverRules::of(&rules, &is_tuned, at));
-            MeasureByRule { measure: measure.clone(), levels: levels.collect(), rules }
+            let levels = (0..levels_c.len() - 1).filter_map(|at| LevelOverRules::of(&rules, &is_tuned, at));
+            MeasureByRule {
+                measure: measure.clone(),
+                outweighs: OutweighsOverRules::of(&rules, &is_tuned),
+                levels: levels.collect(),
+                rules,
+            }
         };
+        let target = own.rule.tuned.fit;
         Some(Self {
             realizations,
+            realizations_of_study,
             years_of_record,
-            target: own.rule.tuned.fit,
+            target,
+            is_tuned_to_peak_alone: target.median_melt_out_day.value().is_none(),
             peak_tolerance_pct: PEAK_TOLERANCE_PCT,
             melt_out_tolerance_days: MELT_OUT_TOLERANCE_DAYS,
+            factor_bounds: FACTOR_BOUNDS,
             interval: "1.645 Monte Carlo errors either way; the error is the standard deviation over 400 resamples of whole realizations",
             alternatives: runs.len() - 1,
-            alternatives_tuned: runs.iter().skip(1).filter(|runs| runs.rule.tuned.is_tuned).count(),
+            alternatives_tuned: is_tuned[1..].iter().filter(|is_tuned| **is_tuned).count(),
             rules: runs.iter().map(|runs| runs.rule).collect(),
             measures: measures.iter().enumerate().map(of_measure).collect(),
         })
@@ -193,6 +181,7 @@ impl OfRule {
         Self {
             precipitation_spread: found.precipitation_spread,
             outweighs: found.outweighs,
+            outweighs_range: found.outweighs_range,
             levels: others
                 .map(|(_, level)| LevelOfRule {
                     level_c: level.level_c,
@@ -203,43 +192,5 @@ impl OfRule {
                 })
                 .collect(),
         }
-    }
-}
-
-impl Weight {
-    fn of(ratio: Option<Estimate>) -> Self {
-        let Some(Estimate { value, monte_carlo_error: Some(error) }) = ratio else { return Self::CannotTell };
-        if value - ERRORS * error > 1.0 {
-            Self::Outweighs
-        } else if value + ERRORS * error < 1.0 {
-            Self::DoesNotOutweigh
-        } else {
-            Self::CannotTell
-        }
-    }
-}
-
-impl LevelOverRules {
-    fn of(rules: &[OfRule], is_tuned: &[bool], level: usize) -> Option<Self> {
-        let at = |rule: usize| rules[rule].levels.get(level);
-        let tuned: Vec<usize> = (0..rules.len()).filter(|rule| is_tuned[*rule]).collect();
-        let over = |number: fn(&LevelOfRule) -> Option<f64>| {
-            let numbers: Option<Vec<f64>> = tuned.iter().map(|rule| number(at(*rule)?)).collect();
-            OverSets::of(numbers?.into_iter())
-        };
-        let own = at(0)?;
-        let weight = |rule: &usize| at(*rule).map_or(Weight::CannotTell, |level| level.weight);
-        let is_against = |rule: &usize| {
-            let [own, other] = [own.weight, weight(rule)];
-            own != other && own != Weight::CannotTell && other != Weight::CannotTell
-        };
-        Some(Self {
-            level_c: own.level_c,
-            shift: over(|level| level.shift.map(|shift| shift.median.value)),
-            percent_change: over(|level| level.percent_change),
-            signal_to_spread: over(|level| level.signal_to_spread.map(|ratio| ratio.value)),
-            against: tuned.iter().copied().filter(is_against).collect(),
-            cannot_tell: tuned.iter().copied().filter(|rule| weight(rule) == Weight::CannotTell).collect(),
-        })
     }
 }

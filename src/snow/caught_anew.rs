@@ -67,10 +67,13 @@ mod tests {
         made.precipitation_mm
     }
 
-    fn catch(half_snow_at_c: f64, rain: f64, snow: f64) -> Catch {
+    fn catch(half_snow_at_c: f64, of_rain: f64, of_snow: f64) -> Catch {
         let rain_snow = PhaseRule::LINEAR.with_half_snow_at(half_snow_at_c);
         let snow = SnowParams { rain_snow, ..SnowParams::defaults(DegreeRule::Mean, false) };
-        Catch { phase: StationPhase::of(&snow, 1000.0), multiplier: GaugeMultiplier { rain, snow } }
+        Catch {
+            phase: StationPhase::of(&snow, 1000.0),
+            multiplier: GaugeMultiplier { rain: of_rain, snow: of_snow },
+        }
     }
 
     /// By hand: snow, half snow and rain were corrected by 1.5, 1.2 and 0.9 (the mean of 1.5 and 0.9 at half snow, 1 degC). With snow by 3 and

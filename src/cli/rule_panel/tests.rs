@@ -17,7 +17,7 @@ fn found() -> (Ready, Findings) {
     let path = folder.path().join(DEMO);
     let scenario = std::fs::read_to_string(&path).unwrap();
     let scenario = scenario.replace("[realizations]\n", "[realizations]\ncount = 12\nyears = 4\n")
-        + "\n[findings.rule_panel]\nrealizations = 12\n";
+        + "\n[findings.rule_panel]\n";
     std::fs::write(&path, scenario).unwrap();
     let ready = assemble(&path, &shared).unwrap();
     let findings = runs::find(&ready, &ready.measures(), &Progress::new(&shared)).unwrap();
@@ -34,6 +34,7 @@ fn the_studys_own_rule_is_the_study_and_others_are_as_good_a_fit() {
     let own = &panel.measures[0].rules[0];
     assert_eq!(own.precipitation_spread, headline.precipitation_spread);
     assert_eq!(own.outweighs, headline.outweighs);
+    assert_eq!(own.outweighs_range, headline.outweighs_range);
     let warmed = headline.levels.iter().filter(|level| level.shift.is_some());
     for (of_panel, of_study) in own.levels.iter().zip(warmed) {
         assert_eq!((of_panel.level_c, of_panel.shift), (of_study.level_c, of_study.shift));
@@ -47,7 +48,8 @@ fn the_studys_own_rule_is_the_study_and_others_are_as_good_a_fit() {
     assert_eq!(of_own.fit, panel.target);
 
     let rules: Vec<Rule> = panel.rules.iter().map(|rule| rule.rule).collect();
-    let half_snow = |temperature_c| Rule::HalfSnowAt { temperature_c, is_wet_bulb: false };
+    let half_snow =
+        |temperature_c| Rule::HalfSnowAt { temperature_c, is_wet_bulb: false, replaces_tanh: false };
     let gradient = |c_per_km| Rule::TemperatureGradient { c_per_km };
     // The demo's linear rule between -1 and 3 degC has half snow at 1 degC, and its gradient is -6 degC per km.
     let expected = [

@@ -24,7 +24,7 @@ fn rule(rule: Rule, is_tuned: bool) -> PanelRule {
 /// Every kind of rule; each loses somewhat more than the one before it.
 const RULES: [Rule; 5] = [
     Rule::StudysOwn,
-    Rule::HalfSnowAt { temperature_c: -0.4, is_wet_bulb: true },
+    Rule::HalfSnowAt { temperature_c: -0.4, is_wet_bulb: true, replaces_tanh: true },
     Rule::ConstantFactor,
     Rule::SeasonalFactor,
     Rule::TemperatureGradient { c_per_km: -6.5 },
@@ -46,7 +46,7 @@ pub fn panel(findings: &Findings, loss_mm: f64, is_tuned: bool) -> Option<RulePa
         ),
     });
     let runs: Vec<RuleRuns> = runs.collect();
-    RulePanel::of(&[measure], &runs, 40, (levels_c, findings.reference), 7)
+    RulePanel::of(&[measure], &runs, (findings.realizations, 40), (levels_c, findings.reference), 7)
 }
 
 fn with_panel(study: &Study<'_>, loss_mm: f64, is_tuned: bool) -> Findings {

@@ -1,8 +1,8 @@
 //! What the figure says.
 
-use super::super::labels::{counted, level, sentence, signed};
+use super::super::labels::{between_levels, counted, level, sentence, signed};
 use super::FIGURE;
-use crate::findings::{LevelOverRules, MeasureByRule, Rule, RulePanel};
+use crate::findings::{Crossing, MeasureByRule, OfRule, PanelRule, Rule, RulePanel};
 use crate::units::UnitSystem;
 
 /// Every text of the figure but names of levels.
@@ -18,14 +18,28 @@ pub(super) struct Words {
     pub description: String,
 }
 
-/// `half snow at −0.4 °C`, `temperature gradient −5 °C per km`.
+/// What the words are of: the panel's first measure, and the place of the level farthest from the reference of those that are drawn.
+#[derive(Clone, Copy)]
+pub(super) struct Subject<'a> {
+    pub panel: &'a RulePanel,
+    pub measure: &'a MeasureByRule,
+    pub farthest: usize,
+    /// Whether every 5-95 % range is of pairs enough to be one.
+    pub has_ranges: bool,
+    /// Water years of a realization.
+    pub years: usize,
+    pub units: UnitSystem,
+}
+
+/// `half snow at −0.4 °C`, `gradient −5 °C per km`.
 pub fn rule_in_words(rule: Rule, units: UnitSystem) -> String {
     match rule {
         Rule::StudysOwn => "the study's own rules".to_owned(),
-        Rule::HalfSnowAt { temperature_c, is_wet_bulb } => {
+        Rule::HalfSnowAt { temperature_c, is_wet_bulb, replaces_tanh } => {
             let unit = units.temperature();
             let of = if is_wet_bulb { " wet bulb" } else { "" };
-            format!("half snow at {} {}{of}", number(unit.of(temperature_c)), unit.word)
+            let replaced = if replaces_tanh { " (linear in place of tanh)" } else { "" };
+            format!("half snow at {} {}{of}{replaced}", number(unit.of(temperature_c)), unit.word)
         }
         Rule::ConstantFactor => "degree-day factor without season".to_owned(),
         Rule::SeasonalFactor => "degree-day factor with a season".to_owned(),
@@ -43,58 +57,36 @@ fn number(value: f64) -> String {
 }
 
 impl Words {
-    pub fn of(
-        panel: &RulePanel,
-        measure: &MeasureByRule,
-        shown: &str,
-        years: usize,
-        units: UnitSystem,
-    ) -> Option<Self> {
-        let farthest = measure.levels.last()?;
-        let title = title(panel, measure, farthest, units)?;
+    pub fn of(of: Subject<'_>, shown: &str) -> Option<Self> {
+        let Subject { panel, measure, units, years, .. } = of;
+        let title = title(of)?;
         let depth = units.depth().word;
-        let rules = panel.rules.iter().map(|rule| {
-            let mut lines = vec![sentence(&rule_in_words(rule.rule, units))];
-            if rule.rule == Rule::StudysOwn {
-                lines.push("as in the rest of this report".to_owned());
-            } else if !rule.tuned.is_tuned {
-                lines.push("could not be tuned: in no range".to_owned());
+        let lines = |(rule, found): (&PanelRule, &OfRule)| lines(rule, found, units);
+        let at_farthest = |(rule, found): (&PanelRule, &OfRule)| {
+            let level_of = found.levels.get(of.farthest).filter(|_| rule.tuned.is_tuned)?;
+            let shift = level_of.shift?.median.value;
+            let name = rule_in_words(rule.rule, units);
+            Some(format!("{name}: {} {depth} at {}", signed(units, shift), level(units, level_of.level_c)))
+        };
+        let description: Vec<String> =
+            panel.rules.iter().zip(&measure.rules).filter_map(at_farthest).collect();
+        let runs = match (panel.realizations, panel.realizations_of_study) {
+            (some, of_study) if some < of_study => {
+                format!("the study's first {some} of {}", counted(of_study, "realization"))
             }
-            lines
-        });
-        let description: Vec<String> = panel
-            .rules
-            .iter()
-            .zip(&measure.rules)
-            .filter_map(|(rule, found)| {
-                let last = found.levels.last()?;
-                let shift = last.shift?.median.value;
-                let of = rule_in_words(rule.rule, units);
-                Some(format!("{of}: {} {depth} at {}", signed(units, shift), level(units, last.level_c)))
-            })
-            .collect();
+            (all, _) => counted(all, "realization"),
+        };
+        let runs = format!("{runs} of {}", counted(years, "year"));
         Some(Self {
-            sample: format!(
-                "{} of {}, the same under every rule and level",
-                counted(panel.realizations, "realization"),
-                counted(years, "year")
-            ),
+            sample: sentence(&format!("{runs}, the same under every rule and level")),
             axis: format!("Change of {} from the reference, {depth}", measure.measure.title),
-            rules: rules.collect(),
-            key: format!(
-                "Mark: median over realizations, each against itself. Line: 5–95 % of them. Grey row: the study's own rules. Hollow: a rule that could \
-                 not be tuned. Every other rule is first tuned, by the catch of snow and the melt factors, to the study's own mean peak SWE and \
-                 median melt-out in {} of the record.",
-                counted(panel.years_of_record, "year")
-            ),
+            rules: panel.rules.iter().zip(&measure.rules).map(lines).collect(),
+            key: key(of),
             caption: format!(
-                "{} Each row holds the change of {} under one rule in place of the study's own, over {} of {}, the same at each warming level.{shown} \
-                 The 5–95 % range shows chance between realizations, not day-to-day variation; the distance between rows shows what the choice of \
-                 the rule does. Numbers stand in tables/rule-panel.csv.",
-                FIGURE.question,
-                measure.measure.title,
-                counted(panel.realizations, "realization"),
-                counted(years, "year")
+                "{} Each row holds the change of {} under one rule in place of the study's own, over {runs}, the same at each warming level.{shown} \
+                 Lines show chance between realizations, not day-to-day variation; the distance between rows shows what the choice of the rule \
+                 does. Numbers stand in tables/rule-panel.csv.",
+                FIGURE.question, measure.measure.title,
             ),
             alt: format!("{title}. A row of marks for each rule."),
             description: format!("{}.", description.join("; ")),
@@ -103,37 +95,89 @@ impl Words {
     }
 }
 
-/// By how much, over rules, and how many say the opposite.
-fn title(
-    panel: &RulePanel,
-    measure: &MeasureByRule,
-    farthest: &LevelOverRules,
-    units: UnitSystem,
-) -> Option<String> {
-    let at = level(units, farthest.level_c);
-    let range = farthest.shift?;
-    let [low, high] = [range.lowest, range.highest].map(|mm| signed(units, mm));
-    let of = if low == high { low } else { format!("{low} to {high}") };
-    let rules = panel.alternatives_tuned;
-    let mut against: Vec<usize> =
-        measure.levels.iter().flat_map(|level| level.against.iter().copied()).collect();
-    against.sort_unstable();
-    against.dedup();
-    let is_open = measure.levels.iter().any(|level| !level.cannot_tell.is_empty());
-    let near = if is_open { ", some levels too near to call" } else { "" };
-    let verdict = match (rules, against.len()) {
-        (0, _) => "no other rule could be tuned".to_owned(),
-        (_, 0) => format!("none of {} turns the verdict{near}", counted(rules, "other rule")),
-        (_, turned) => format!(
-            "{turned} of {} {} the verdict at a level",
-            counted(rules, "other rule"),
-            if turned == 1 { "turns" } else { "turn" }
-        ),
+/// A rule's name, what it takes the place of, and from which warming on its shift outweighs its spread.
+fn lines(rule: &PanelRule, found: &OfRule, units: UnitSystem) -> Vec<String> {
+    let name = sentence(&rule_in_words(rule.rule, units));
+    let mut lines: Vec<String> = match name.split_once(" (") {
+        Some((name, replaced)) => vec![name.to_owned(), replaced.trim_end_matches(')').to_owned()],
+        None => vec![name],
     };
-    let title = format!(
-        "{} changes by {of} {} at {at}, by rule; {verdict}",
+    match found.outweighs {
+        _ if !rule.tuned.is_tuned => lines.push("could not be tuned: not shown".to_owned()),
+        Crossing::At { level_c, .. } => {
+            lines.push(format!("outweighs from {} on", between_levels(units, level_c)));
+        }
+        Crossing::NotReached { up_to_c } => {
+            lines.push(format!("does not outweigh up to {}", level(units, up_to_c)));
+        }
+        Crossing::Unknown => {}
+    }
+    lines
+}
+
+fn key(of: Subject<'_>) -> String {
+    let panel = of.panel;
+    let line = if of.has_ranges { " Line: 5–95 % of them." } else { "" };
+    let to = if panel.is_tuned_to_peak_alone {
+        "mean peak SWE alone (its snow has no median melt-out)"
+    } else {
+        "mean peak SWE and median melt-out"
+    };
+    let factors = if panel.is_tuned_to_peak_alone {
+        "the catch of snow"
+    } else {
+        "the catch of snow and the melt factors"
+    };
+    format!(
+        "Mark: median over realizations, each against itself.{line} Band: the half of the rule's own 5–95 % precipitation spread at the reference; a \
+         mark beyond it outweighs the spread. Every other rule is first tuned, by {factors}, to the study's own {to} in {} of the record.",
+        counted(panel.years_of_record, "year")
+    )
+}
+
+/// By how much, over rules, and what becomes of the verdict.
+fn title(of: Subject<'_>) -> Option<String> {
+    let Subject { panel, measure, units, .. } = of;
+    let farthest = measure.levels.get(of.farthest)?;
+    let range = farthest.shift.as_ref()?;
+    let [low, high] = [range.lowest, range.highest].map(|mm| signed(units, mm));
+    let by = if low == high { low } else { format!("{low} to {high}") };
+    Some(sentence(&format!(
+        "{} changes by {by} {} at {}, by rule; {}",
         measure.measure.title,
-        units.depth().word
-    );
-    Some(sentence(&title))
+        units.depth().word,
+        level(units, farthest.level_c),
+        verdict(panel, measure, units)
+    )))
+}
+
+fn verdict(panel: &RulePanel, measure: &MeasureByRule, units: UnitSystem) -> String {
+    let rules = panel.alternatives_tuned + 1;
+    if rules == 1 {
+        return "no other rule could be tuned".to_owned();
+    }
+    let hanging: Vec<String> =
+        measure.levels.iter().filter(|of| of.hangs_on_rule).map(|of| level(units, of.level_c)).collect();
+    if !hanging.is_empty() {
+        return format!(
+            "whether it outweighs the precipitation spread hangs on the rule at {}",
+            hanging.join(", ")
+        );
+    }
+    let outweighs = &measure.outweighs;
+    match &outweighs.range_c {
+        Some(range) => {
+            let [low, high] = [range.lowest, range.highest].map(|at_c| between_levels(units, at_c));
+            let from = if low == high { low } else { format!("{low} to {high}") };
+            let under = match range.without.len() {
+                0 => "each".to_owned(),
+                without => format!("{} of {rules} rules", rules - without),
+            };
+            format!("it outweighs the precipitation spread from {from} on under {under}")
+        }
+        None if outweighs.not_reached.len() == rules => {
+            format!("it outweighs the precipitation spread under none of {rules} rules")
+        }
+        None => "no two rules say the opposite of each other".to_owned(),
+    }
 }

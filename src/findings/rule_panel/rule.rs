@@ -1,4 +1,4 @@
-//! Published rules and numbers beside a study's own: what each changes, and what is tuned afterwards.
+//! Other rules and numbers beside a study's own, published ones where there are such: what each changes, and what is tuned afterwards.
 
 use crate::basin::TemperatureGradient;
 use crate::fit::Parameters;
@@ -29,6 +29,8 @@ pub enum Rule {
         temperature_c: f64,
         /// Whether it is the wet bulb's.
         is_wet_bulb: bool,
+        /// Whether it is of the linear rule in place of `tanh`, which cannot be moved.
+        replaces_tanh: bool,
     },
     /// A degree-day factor that is the same all year.
     ConstantFactor,
@@ -65,12 +67,14 @@ fn half_snow(own: &Parameters) -> Vec<(Rule, Parameters)> {
     let others = published.into_iter().filter(|published| (rule.half_snow_c() - published).abs() > SAME);
     others
         .map(|temperature_c| {
-            let rain_snow = match rule {
-                PhaseRule::Tanh => PhaseRule::LINEAR.with_half_snow_at(temperature_c),
-                other => other.with_half_snow_at(temperature_c),
-            };
-            let snow = SnowParams { rain_snow, ..own.snow };
-            (Rule::HalfSnowAt { temperature_c, is_wet_bulb }, Parameters { snow, ..own.clone() })
+            let replaces_tanh = rule == PhaseRule::Tanh;
+            let linear = if is_wet_bulb { PhaseRule::LINEAR_WET_BULB } else { PhaseRule::LINEAR };
+            let moved = if replaces_tanh { linear } else { rule };
+            let snow = SnowParams { rain_snow: moved.with_half_snow_at(temperature_c), ..own.snow };
+            (
+                Rule::HalfSnowAt { temperature_c, is_wet_bulb, replaces_tanh },
+                Parameters { snow, ..own.clone() },
+            )
         })
         .collect()
 }

@@ -7,13 +7,20 @@ use serde::Serialize;
 pub const PEAK_TOLERANCE_PCT: f64 = 1.0;
 /// The same of the median melt-out, days.
 pub const MELT_OUT_TOLERANCE_DAYS: f64 = 1.0;
-/// The widest that either factor may go from 1.
-const WIDEST: [f64; 2] = [0.25, 4.0];
+/// Least and greatest factor that is looked at.
+pub const FACTOR_BOUNDS: [f64; 2] = [0.25, 4.0];
 /// The search for the catch ends so near to the target, a share of it.
 const NEAR_PEAK: f64 = 1e-4;
 /// That for the melt ends so near, days: medians of whole days step by halves.
 const NEAR_MELT_OUT_DAYS: f64 = 0.25;
 const MOST_STEPS: usize = 14;
+/// A factor so near to a bound stands at it, a share of the bound: a bisection never quite comes there.
+const AT_BOUND: f64 = 0.01;
+
+/// Whether a search ended at one of its bounds.
+pub fn is_at_bound(factor: f64) -> bool {
+    FACTOR_BOUNDS.iter().any(|bound| (factor / bound - 1.0).abs() <= AT_BOUND)
+}
 
 /// What the record's own years come to at the reference.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
@@ -71,7 +78,7 @@ pub fn tune<E>(target: &Fit, mut run: impl FnMut([f64; 2]) -> Result<Fit, E>) ->
     if late.abs() <= NEAR_MELT_OUT_DAYS {
         return Ok(best);
     }
-    let [mut least, mut most] = if late > 0.0 { [1.0, WIDEST[1]] } else { [WIDEST[0], 1.0] };
+    let [mut least, mut most] = if late > 0.0 { [1.0, FACTOR_BOUNDS[1]] } else { [FACTOR_BOUNDS[0], 1.0] };
     let mut catch = first.catch_factor;
     for _ in 0..MOST_STEPS {
         let melt = (least * most).sqrt();
@@ -101,7 +108,7 @@ fn at<E>(
     target: &Fit,
     run: &mut impl FnMut([f64; 2]) -> Result<Fit, E>,
 ) -> Result<Tuned, E> {
-    let [least, most] = WIDEST;
+    let [least, most] = FACTOR_BOUNDS;
     let goal = target.mean_peak_swe_mm;
     let (mut catch, mut before) = (first, None::<[f64; 2]>);
     let mut best = None::<(f64, Fit)>;

@@ -1,13 +1,16 @@
-//! Whether the answer is the model's choice: the headline under other published rules.
+//! Whether the answer is the model's choice: the headline under other rules.
+
+mod answers;
+mod grids;
 
 use super::super::answer::{is_scarce, telling_level};
-use super::super::numbers::{DASH, counted, fixed, signed};
+use super::super::numbers::{counted, fixed, signed, trimmed};
 use super::super::reader::Reader;
 use super::super::study::Study;
 use super::Figures;
 use crate::figures::{Part, rule_in_words, sentence};
-use crate::findings::{LevelOverRules, MeasureByRule, PanelRule, RulePanel, Weight};
-use crate::season::{Kind, Outcome};
+use crate::findings::{MeasureByRule, PanelRule, RulePanel, is_at_bound};
+use crate::season::{Kind, MELT_OUT_DAY};
 use maud::{Markup, html};
 
 /// The section; nothing where no panel was asked for, or there is hardly any snow.
@@ -19,160 +22,89 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     html! { @if let Some(panel) = panel {
         h2 { "If the model's rules were others" }
         p { (what_was_run(panel, study.reader)) }
-        @for measure in &panel.measures { @for said in answers(panel, measure, told_c, study.reader) { p { (said) } } }
+        @if panel.alternatives_tuned == 0 {
+            p { "No other rule could be tuned to the study's own snow, so that the page says nothing of other rules." }
+        } @else {
+            @for measure in told(panel) { @for said in answers::answers(panel, measure, told_c, study.reader) { p { (said) } } }
+        }
         (figures.of(Part::Rules))
-        (tuning(panel, study.reader))
-        @for measure in &panel.measures { (table(panel, measure, study.reader)) }
+        (grids::tuning(panel, study.reader))
+        @if panel.alternatives_tuned > 0 { @for measure in told(panel) { (grids::shifts(panel, measure, study.reader)) } }
     } }
 }
 
+/// What the page tells of: melt-out only where the rules were tuned to one.
+fn told(panel: &RulePanel) -> impl Iterator<Item = &MeasureByRule> {
+    panel.measures.iter().filter(|of| !panel.is_tuned_to_peak_alone || of.measure.name != MELT_OUT_DAY)
+}
+
 fn what_was_run(panel: &RulePanel, reader: Reader) -> String {
-    let tuned = panel.alternatives_tuned;
     let all = panel.alternatives;
-    let left: Vec<String> = names(panel, reader, |rule| !rule.tuned.is_tuned);
-    let left = if left.is_empty() {
-        String::new()
+    let runs = match (panel.realizations, panel.realizations_of_study) {
+        (some, of_study) if some < of_study => {
+            format!("the study's first {} of {}", fixed(some as f64, 0), counted(of_study, "realization"))
+        }
+        (1, _) => "the study's 1 realization".to_owned(),
+        (all, _) => format!("all {} of the study", counted(all, "realization")),
+    };
+    let [least, greatest] = panel.factor_bounds.map(|bound| trimmed(&fixed(bound, 2)).to_owned());
+    let peak = format!(
+        "mean peak SWE over {} of the record within {} %",
+        counted(panel.years_of_record, "year"),
+        fixed(panel.peak_tolerance_pct, 0)
+    );
+    let (factors, goal) = if panel.is_tuned_to_peak_alone {
+        (
+            "a factor on the snow's catch",
+            format!(
+                "bring its {peak} of the study's own. The study's own snow has no median melt-out by which to tune the melt factors: rules were \
+                 tuned to the peak alone, and the page says nothing of melt-out"
+            ),
+        )
     } else {
-        format!(" Not tuned, and in no range: {}.", left.join("; "))
+        (
+            "factors on the snow's catch and on the melt factors",
+            format!(
+                "bring its {peak}, and its median melt-out within {}, of the study's own",
+                counted(panel.melt_out_tolerance_days as usize, "day")
+            ),
+        )
     };
     format!(
-        "{} beside the study's own, {} of each, the same under all. Each was first tuned to the study's own snow, by the catch of snow and the \
-         melt factors, until its mean peak SWE over {} of the record came within {} % and its median melt-out within {} of the study's own: \
-         {tuned} of {all} did.{left}",
-        sentence(&counted(all, "published rule")),
-        counted(panel.realizations, "realization"),
-        counted(panel.years_of_record, "year"),
-        fixed(panel.peak_tolerance_pct, 0),
-        counted(panel.melt_out_tolerance_days as usize, "day"),
+        "{} beside the study's own, by {runs}, the same under each. For each rule {factors} were looked for, between × {least} and × {greatest}, \
+         that {goal}: found for {} of {all}.{}",
+        sentence(&counted(all, "other rule")),
+        panel.alternatives_tuned,
+        left_out(panel, reader)
     )
 }
 
-fn names(panel: &RulePanel, reader: Reader, is_told: impl Fn(&PanelRule) -> bool) -> Vec<String> {
-    let told = panel.rules.iter().filter(|rule| is_told(rule));
-    told.map(|rule| rule_in_words(rule.rule, reader.units)).collect()
-}
-
-/// Whether the verdict holds, and how wide the rules' range is beside that of the realizations.
-fn answers(panel: &RulePanel, measure: &MeasureByRule, told_c: Option<f64>, reader: Reader) -> Vec<String> {
-    if panel.alternatives_tuned == 0 {
-        return vec![
-            "No other rule could be tuned to the study's snow, so that nothing can be said of them."
-                .to_owned(),
-        ];
+/// Which rules were not tuned, and why not where that can be told.
+fn left_out(panel: &RulePanel, reader: Reader) -> String {
+    let left: Vec<&PanelRule> = panel.rules.iter().filter(|rule| !rule.tuned.is_tuned).collect();
+    if left.is_empty() {
+        return String::new();
     }
-    let mut said = vec![holds(panel, measure, reader)];
-    let level = measure.levels.iter().enumerate().find(|(_, level)| Some(level.level_c) == told_c);
-    said.extend(level.and_then(|(at, level)| beside_chance(measure, at, level, reader)));
-    said
-}
-
-/// At which levels another rule says the opposite, or what is said cannot be told.
-fn holds(panel: &RulePanel, measure: &MeasureByRule, reader: Reader) -> String {
-    let title = &measure.measure.title;
-    let listed = |of: &[usize]| -> String {
-        if of.len() > 2 && of.len() == panel.rules.len() {
-            return "every rule".to_owned();
-        }
-        let names: Vec<String> = of
-            .iter()
-            .filter_map(|at| panel.rules.get(*at))
-            .map(|rule| rule_in_words(rule.rule, reader.units))
-            .collect();
-        names.join("; ")
-    };
-    let at = |is_told: fn(&&LevelOverRules) -> bool, of: fn(&LevelOverRules) -> &[usize]| -> Vec<String> {
-        let told = measure.levels.iter().filter(is_told);
-        told.map(|level| format!("at {} under {}", reader.level(level.level_c), listed(of(level)))).collect()
-    };
-    let against = at(|level| !level.against.is_empty(), |level| &level.against);
-    let open = at(|level| !level.cannot_tell.is_empty(), |level| &level.cannot_tell);
-    let alternatives = counted(panel.alternatives_tuned, "alternative");
-    let first = match (against.is_empty(), open.is_empty()) {
-        (true, true) => format!(
-            "{title}: whether the shift outweighs the precipitation spread is answered alike under all {alternatives}, at every level."
-        ),
-        (true, false) => format!(
-            "{title}: no alternative of {} says the opposite of the study's own rules at any level.",
-            fixed(panel.alternatives_tuned as f64, 0)
-        ),
-        (false, _) => format!("{title}: the answer changes {}.", against.join(", and ")),
-    };
-    let open = if open.is_empty() {
-        String::new()
+    let at_bound = left.iter().any(|rule| is_at_bound(rule.tuned.catch_factor));
+    let why = if at_bound {
+        " Where the snow's catch stands at its bound, too little of what falls at the gauge is snow for its catch to bring the peak there."
     } else {
-        format!(
-            " Too near to call, its 90 % Monte Carlo interval on both sides of 1: {}.",
-            open.join(", and ")
-        )
+        ""
     };
-    sentence(&first) + &open
+    let names: Vec<String> = left.iter().map(|rule| rule_in_words(rule.rule, reader.units)).collect();
+    let left = names.join(", ");
+    format!(" Not found, and told of in tables/rule-panel.csv alone: {left}.{why}")
 }
 
-fn beside_chance(
-    measure: &MeasureByRule,
-    at: usize,
-    level: &LevelOverRules,
-    reader: Reader,
-) -> Option<String> {
-    let kind = measure.measure.kind;
-    let own = measure.rules.first()?.levels.get(at)?.shift?;
-    let range = level.shift?;
-    let between = |low: f64, high: f64| match kind {
+/// `−159 to −123 mm`, `−12.5 to −11.0 days`: two changes of a measure, or one where they are told alike.
+fn range_of_changes(kind: Kind, low: f64, high: f64, reader: Reader) -> String {
+    let both = match kind {
         Kind::AmountMm => reader.change_and_change(low, high),
         _ => format!("{} and {} days", signed(low, 1), signed(high, 1)),
     };
-    let ratio = level.signal_to_spread.map_or(String::new(), |ratio| {
-        format!(
-            ", which is {} to {} times the half precipitation spread of the rule",
-            fixed(ratio.lowest, 2),
-            fixed(ratio.highest, 2)
-        )
-    });
-    Some(format!(
-        "At {}, {} changes by between {} whichever rule is right{ratio}. Beside that, under the study's own rules 90 % of the realizations change \
-         by between {}, each against itself.",
-        reader.level(level.level_c),
-        measure.measure.title,
-        between(range.lowest, range.highest),
-        between(own.q05, own.q95)
-    ))
-}
-
-/// How far from the target each ended.
-fn tuning(panel: &RulePanel, reader: Reader) -> Markup {
-    let day = |day: Outcome| reader.outcome(day, Kind::DayOfWaterYear);
-    html! { div.scroll { table {
-        caption { "How each rule was tuned: what the snow's catch and the melt factors were multiplied by, and what the record's own years then come to." }
-        thead { tr {
-            th.text scope="col" { "Rule" } th scope="col" { "Catch" } th scope="col" { "Melt factors" }
-            th scope="col" { "Mean peak SWE, " (reader.units.depth().word) } th scope="col" { "Median melt-out" } th.text scope="col" { "Tuned" }
-        } }
-        tbody { @for rule in &panel.rules { tr {
-            th.text scope="row" { (rule_in_words(rule.rule, reader.units)) }
-            td { "× " (fixed(rule.tuned.catch_factor, 2)) } td { "× " (fixed(rule.tuned.melt_factor, 2)) }
-            td { (reader.amount_bare(rule.tuned.fit.mean_peak_swe_mm)) } td { (day(rule.tuned.fit.median_melt_out_day)) }
-            td.text { (if rule.tuned.is_tuned { "yes" } else { "no" }) }
-        } } }
-    } } }
-}
-
-/// A measure's shifts and ratios, rule by rule.
-fn table(panel: &RulePanel, measure: &MeasureByRule, reader: Reader) -> Markup {
-    let kind = measure.measure.kind;
-    html! { div.scroll { table {
-        caption {
-            "Median change of " (measure.measure.title) " ± its Monte Carlo error, and times the half precipitation spread it points to, by rule and level"
-            @if kind == Kind::AmountMm { ", " (reader.units.depth().word) } ". As in " code { "tables/rule-panel.csv" } "."
-        }
-        thead { tr { th.text scope="col" { "Rule" } @for level in &measure.levels { th scope="col" { (reader.level(level.level_c)) } } } }
-        tbody { @for (rule, found) in panel.rules.iter().zip(&measure.rules) { tr {
-            th.text scope="row" { (rule_in_words(rule.rule, reader.units)) }
-            @for level in &found.levels { td {
-                (level.shift.map_or(DASH.to_owned(), |shift| reader.change_of(kind, shift.median.value, shift.median.monte_carlo_error)))
-                @if let Some(ratio) = level.signal_to_spread {
-                    "; " (fixed(ratio.value, 2)) " ×" @if level.weight == Weight::CannotTell { " (?)" }
-                }
-            } }
-        } } }
-    } } }
+    match both.split_once(" and ") {
+        Some((first, last)) if last.split(' ').next() != Some(first) => format!("{first} to {last}"),
+        Some((_, last)) => last.to_owned(),
+        None => both,
+    }
 }

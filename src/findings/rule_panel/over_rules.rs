@@ -1,0 +1,217 @@
+//! What rules say together: ranges over those that were tuned, and which of them say what.
+
+use super::super::crossing::Crossing;
+use super::super::quantile::sorted;
+use super::super::resample::Estimate;
+use super::{LevelOfRule, OfRule};
+use serde::Serialize;
+
+/// A ratio this many Monte Carlo errors from 1 or nearer tells nothing: the ends of a 90 % interval of a normal.
+const ERRORS: f64 = 1.645;
+
+/// Whether a shift outweighs a spread.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
+#[serde(rename_all = "snake_case")]
+pub enum Weight {
+    /// It does.
+    Outweighs,
+    /// It does not.
+    DoesNotOutweigh,
+    /// The ratio's interval holds 1.
+    CannotTell,
+    /// There is no ratio, or no error of it.
+    NoRatio,
+}
+
+/// From the lowest to the highest number of the rules that have one.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct RangeOverRules {
+    /// The lowest.
+    pub lowest: f64,
+    /// The highest.
+    pub highest: f64,
+    /// Places of the rules without a number.
+    pub without: Vec<usize>,
+}
+
+/// From which warming on the shift outweighs the spread, over rules.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct OutweighsOverRules {
+    /// The range over the rules under which it does, degC, the others named as those without; none where there is none.
+    pub range_c: Option<RangeOverRules>,
+    /// Places of the rules under which it does not up to the highest level.
+    pub not_reached: Vec<usize>,
+    /// Places of the rules that cannot be asked.
+    pub unknown: Vec<usize>,
+}
+
+/// A level over the rules that were tuned, the study's own among them.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct LevelOverRules {
+    /// The level, degC.
+    pub level_c: f64,
+    /// Median shifts.
+    pub shift: Option<RangeOverRules>,
+    /// Percent changes.
+    pub percent_change: Option<RangeOverRules>,
+    /// Ratios of signal to spread.
+    pub signal_to_spread: Option<RangeOverRules>,
+    /// Places of the rules under which the shift outweighs the spread.
+    pub outweighs: Vec<usize>,
+    /// Places of those under which it does not.
+    pub does_not_outweigh: Vec<usize>,
+    /// Places of those whose ratio lies too near 1 to tell.
+    pub cannot_tell: Vec<usize>,
+    /// Places of those without a ratio, or without an error of it.
+    pub no_ratio: Vec<usize>,
+    /// Whether it outweighs under one rule and does not under another.
+    pub hangs_on_rule: bool,
+}
+
+impl Weight {
+    pub(super) fn of(ratio: Option<Estimate>) -> Self {
+        let Some(Estimate { value, monte_carlo_error: Some(error) }) = ratio else { return Self::NoRatio };
+        if value - ERRORS * error > 1.0 {
+            Self::Outweighs
+        } else if value + ERRORS * error < 1.0 {
+            Self::DoesNotOutweigh
+        } else {
+            Self::CannotTell
+        }
+    }
+}
+
+impl RangeOverRules {
+    /// None where no rule has a number.
+    fn of(numbers: impl Iterator<Item = (usize, Option<f64>)>) -> Option<Self> {
+        let (mut found, mut without) = (Vec::new(), Vec::new());
+        for (rule, number) in numbers {
+            match number.filter(|number| number.is_finite()) {
+                Some(number) => found.push(number),
+                None => without.push(rule),
+            }
+        }
+        let found = sorted(found);
+        Some(Self { lowest: *found.first()?, highest: *found.last()?, without })
+    }
+}
+
+impl OutweighsOverRules {
+    pub(super) fn of(rules: &[OfRule], is_tuned: &[bool]) -> Self {
+        let tuned = places(is_tuned);
+        let told = |is_told: fn(&Crossing) -> bool| -> Vec<usize> {
+            tuned.iter().copied().filter(|rule| is_told(&rules[*rule].outweighs)).collect()
+        };
+        let from = |rule: &usize| match rules[*rule].outweighs {
+            Crossing::At { level_c, .. } => (*rule, Some(level_c)),
+            Crossing::NotReached { .. } | Crossing::Unknown => (*rule, None),
+        };
+        Self {
+            range_c: RangeOverRules::of(tuned.iter().map(from)),
+            not_reached: told(|crossing| matches!(crossing, Crossing::NotReached { .. })),
+            unknown: told(|crossing| matches!(crossing, Crossing::Unknown)),
+        }
+    }
+}
+
+impl LevelOverRules {
+    pub(super) fn of(rules: &[OfRule], is_tuned: &[bool], level: usize) -> Option<Self> {
+        let level_c = rules.first()?.levels.get(level)?.level_c;
+        let tuned = places(is_tuned);
+        let at = |rule: usize| rules[rule].levels.get(level);
+        let over = |number: fn(&LevelOfRule) -> Option<f64>| {
+            RangeOverRules::of(tuned.iter().map(|rule| (*rule, at(*rule).and_then(number))))
+        };
+        let saying = |weight: Weight| -> Vec<usize> {
+            let says = |rule: &usize| at(*rule).map_or(Weight::NoRatio, |level| level.weight) == weight;
+            tuned.iter().copied().filter(says).collect()
+        };
+        let [outweighs, does_not_outweigh] = [Weight::Outweighs, Weight::DoesNotOutweigh].map(saying);
+        Some(Self {
+            level_c,
+            shift: over(|level| level.shift.map(|shift| shift.median.value)),
+            percent_change: over(|level| level.percent_change),
+            signal_to_spread: over(|level| level.signal_to_spread.map(|ratio| ratio.value)),
+            hangs_on_rule: !outweighs.is_empty() && !does_not_outweigh.is_empty(),
+            outweighs,
+            does_not_outweigh,
+            cannot_tell: saying(Weight::CannotTell),
+            no_ratio: saying(Weight::NoRatio),
+        })
+    }
+
+    /// Which rules say so.
+    pub fn saying(&self, weight: Weight) -> &[usize] {
+        match weight {
+            Weight::Outweighs => &self.outweighs,
+            Weight::DoesNotOutweigh => &self.does_not_outweigh,
+            Weight::CannotTell => &self.cannot_tell,
+            Weight::NoRatio => &self.no_ratio,
+        }
+    }
+}
+
+fn places(is_tuned: &[bool]) -> Vec<usize> {
+    (0..is_tuned.len()).filter(|rule| is_tuned[*rule]).collect()
+}
+
+#[cfg(test)]
+mod tests {
+    use super::super::super::shift::Shift;
+    use super::*;
+
+    /// A ratio and its error, if it has one.
+    type Ratio = Option<(f64, Option<f64>)>;
+
+    /// A rule that changes by ten times its ratio at one level, and outweighs from some warming on.
+    fn rule(ratio: Ratio, outweighs: Crossing) -> OfRule {
+        let signal_to_spread = ratio.map(|(value, monte_carlo_error)| Estimate { value, monte_carlo_error });
+        let shift = ratio.map(|(value, _)| Shift {
+            median: Estimate { value: -10.0 * value, monte_carlo_error: None },
+            mean: 0.0,
+            q05: 0.0,
+            q95: 0.0,
+            pairs: 40,
+            pairs_without_value: 0,
+        });
+        let weight = Weight::of(signal_to_spread);
+        let level = LevelOfRule { level_c: 2.0, shift, percent_change: None, signal_to_spread, weight };
+        OfRule { precipitation_spread: None, outweighs, outweighs_range: None, levels: vec![level] }
+    }
+
+    /// By hand: 1.1 ± 0.1 lies within 1.645 errors of 1, 1.2 ± 0.1 and 0.8 ± 0.1 do not.
+    #[test]
+    fn a_ratio_says_one_of_four_things() {
+        let says = |value, monte_carlo_error| Weight::of(Some(Estimate { value, monte_carlo_error }));
+        assert_eq!(says(1.2, Some(0.1)), Weight::Outweighs);
+        assert_eq!(says(0.8, Some(0.1)), Weight::DoesNotOutweigh);
+        assert_eq!(says(1.1, Some(0.1)), Weight::CannotTell);
+        assert_eq!([says(1.2, None), Weight::of(None)], [Weight::NoRatio; 2]);
+    }
+
+    /// By hand: the study's own rules cannot tell, one rule says yes, one no, one has no number, and one was not tuned.
+    #[test]
+    fn rules_that_differ_are_named_though_the_studys_own_cannot_tell() {
+        let at = |level_c| Crossing::At { level_c, until_c: None };
+        let rules = [
+            rule(Some((1.0, Some(0.1))), at(2.0)),
+            rule(Some((1.5, Some(0.1))), at(1.5)),
+            rule(Some((0.5, Some(0.1))), Crossing::NotReached { up_to_c: 2.0 }),
+            rule(None, Crossing::Unknown),
+            rule(Some((9.0, Some(0.1))), at(0.1)),
+        ];
+        let is_tuned = [true, true, true, true, false];
+        let level = LevelOverRules::of(&rules, &is_tuned, 0).unwrap();
+        let all = [Weight::Outweighs, Weight::DoesNotOutweigh, Weight::CannotTell, Weight::NoRatio];
+        assert_eq!(all.map(|weight| level.saying(weight).to_vec()), [vec![1], vec![2], vec![0], vec![3]]);
+        assert!(level.hangs_on_rule);
+        let expected = RangeOverRules { lowest: -15.0, highest: -5.0, without: vec![3] };
+        assert_eq!(level.shift, Some(expected));
+        let outweighs = OutweighsOverRules::of(&rules, &is_tuned);
+        let expected = RangeOverRules { lowest: 1.5, highest: 2.0, without: vec![2, 3] };
+        assert_eq!(outweighs.range_c, Some(expected));
+        assert_eq!((outweighs.not_reached, outweighs.unknown), (vec![2], vec![3]));
+        let of_two = LevelOverRules::of(&rules[..2], &is_tuned[..2], 0).unwrap();
+        assert!(!of_two.hangs_on_rule, "one cannot tell and one says yes");
+    }
+}
