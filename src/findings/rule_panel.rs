@@ -176,6 +176,12 @@ impl RulePanel {
 }
 
 impl OfRule {
+    /// Whether the shift comes to outweigh the spread in none of these realizations' levels, but might in others of the same kind.
+    pub fn may_outweigh_by_chance(&self) -> bool {
+        let is_not_reached = matches!(self.outweighs, Crossing::NotReached { .. });
+        is_not_reached && self.outweighs_range.is_some_and(|range| range.q05_c.is_some())
+    }
+
     fn of(found: &MeasureFindings, reference: usize) -> Self {
         let others = found.levels.iter().enumerate().filter(|(at, _)| *at != reference);
         Self {

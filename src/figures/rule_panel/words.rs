@@ -108,7 +108,9 @@ fn lines(rule: &PanelRule, found: &OfRule, units: UnitSystem) -> Vec<String> {
             lines.push(format!("outweighs from {} on", between_levels(units, level_c)));
         }
         Crossing::NotReached { up_to_c } => {
-            lines.push(format!("does not outweigh up to {}", level(units, up_to_c)));
+            // Other realizations would have it cross: that is no answer.
+            let says = if found.may_outweigh_by_chance() { "cannot tell" } else { "does not outweigh" };
+            lines.push(format!("{says} up to {}", level(units, up_to_c)));
         }
         Crossing::Unknown => {}
     }
@@ -142,8 +144,9 @@ fn title(of: Subject<'_>) -> Option<String> {
     let range = farthest.shift.as_ref()?;
     let [low, high] = [range.lowest, range.highest].map(|mm| signed(units, mm));
     let by = if low == high { low } else { format!("{low} to {high}") };
+    let whose = if panel.alternatives_tuned == 0 { " under the study's own rules" } else { ", by rule" };
     Some(sentence(&format!(
-        "{} changes by {by} {} at {}, by rule; {}",
+        "{} changes by {by} {} at {}{whose}; {}",
         measure.measure.title,
         units.depth().word,
         level(units, farthest.level_c),
@@ -170,7 +173,7 @@ fn verdict(panel: &RulePanel, measure: &MeasureByRule, units: UnitSystem) -> Str
             let [low, high] = [range.lowest, range.highest].map(|at_c| between_levels(units, at_c));
             let from = if low == high { low } else { format!("{low} to {high}") };
             let under = match range.without.len() {
-                0 => "each".to_owned(),
+                0 => "every rule".to_owned(),
                 without => format!("{} of {rules} rules", rules - without),
             };
             format!("it outweighs the precipitation spread from {from} on under {under}")

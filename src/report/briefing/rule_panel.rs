@@ -9,7 +9,7 @@ use super::super::reader::Reader;
 use super::super::study::Study;
 use super::Figures;
 use crate::figures::{Part, rule_in_words, sentence};
-use crate::findings::{MeasureByRule, PanelRule, RulePanel, is_at_bound};
+use crate::findings::{MeasureByRule, OfRule, PanelRule, RulePanel, is_at_bound};
 use crate::season::{Kind, MELT_OUT_DAY};
 use maud::{Markup, html};
 
@@ -54,25 +54,23 @@ fn what_was_run(panel: &RulePanel, reader: Reader) -> String {
         fixed(panel.peak_tolerance_pct, 0)
     );
     let (factors, goal) = if panel.is_tuned_to_peak_alone {
-        (
-            "a factor on the snow's catch",
-            format!(
-                "bring its {peak} of the study's own. The study's own snow has no median melt-out by which to tune the melt factors: rules were \
-                 tuned to the peak alone, and the page says nothing of melt-out"
-            ),
-        )
+        ("a factor on the snow's catch was", format!("brings its {peak} of the study's own"))
     } else {
+        let days = counted(panel.melt_out_tolerance_days as usize, "day");
         (
-            "factors on the snow's catch and on the melt factors",
-            format!(
-                "bring its {peak}, and its median melt-out within {}, of the study's own",
-                counted(panel.melt_out_tolerance_days as usize, "day")
-            ),
+            "factors on the snow's catch and on the melt factors were",
+            format!("bring its {peak}, and its median melt-out within {days}, of the study's own"),
         )
     };
+    let alone = if panel.is_tuned_to_peak_alone {
+        " The study's own snow has no median melt-out, so that nothing ties down the melt factors: they are left as they are, rules are tuned to the \
+         peak alone, and nothing is said of melt-out."
+    } else {
+        ""
+    };
     format!(
-        "{} beside the study's own, by {runs}, the same under each. For each rule {factors} were looked for, between × {least} and × {greatest}, \
-         that {goal}: found for {} of {all}.{}",
+        "{} beside the study's own, by {runs}, the same under each. For each rule {factors} looked for, between × {least} and × {greatest}, that \
+         {goal}: found for {} of {all}.{alone}{}",
         sentence(&counted(all, "other rule")),
         panel.alternatives_tuned,
         left_out(panel, reader)
@@ -94,6 +92,18 @@ fn left_out(panel: &RulePanel, reader: Reader) -> String {
     let names: Vec<String> = left.iter().map(|rule| rule_in_words(rule.rule, reader.units)).collect();
     let left = names.join(", ");
     format!(" Not found, and told of in tables/rule-panel.csv alone: {left}.{why}")
+}
+
+/// `+1.2 to +1.5`, `+3.8 to above +4.0`: the Monte Carlo range of the warming from which a shift outweighs its spread; nothing where that is one.
+fn ends_in_words(found: &OfRule, reader: Reader) -> Option<String> {
+    let highest_c = found.levels.last()?.level_c;
+    let end = |at_c: Option<f64>| match at_c {
+        Some(at_c) => reader.between_levels_bare(at_c),
+        None => format!("above {}", reader.between_levels_bare(highest_c)),
+    };
+    let range = found.outweighs_range?;
+    let [low, high] = [range.q05_c, range.q95_c].map(end);
+    (low != high).then(|| format!("{low} to {high}"))
 }
 
 /// `−159 to −123 mm`, `−12.5 to −11.0 days`: two changes of a measure, or one where they are told alike.

@@ -2,9 +2,9 @@
 
 use super::super::super::numbers::{counted, fixed};
 use super::super::super::reader::Reader;
-use super::range_of_changes;
+use super::{ends_in_words, range_of_changes};
 use crate::figures::{rule_in_words, sentence};
-use crate::findings::{Crossing, LevelOverRules, MeasureByRule, RulePanel, Weight};
+use crate::findings::{Crossing, LevelOverRules, MeasureByRule, RangeOverRules, RulePanel, Weight};
 
 /// What a rule can say at a level.
 const WEIGHTS: [Weight; 4] =
@@ -45,104 +45,123 @@ impl Panel<'_> {
 
     /// The headline of the study, rule by rule; nothing where no rule can be asked.
     fn from_where(&self) -> Option<String> {
-        let title = &self.measure.measure.title;
         let outweighs = &self.measure.outweighs;
-        let own = self.measure.rules.first()?.outweighs;
-        let up_to_c = self.measure.levels.last()?.level_c;
-        let up_to = self.reader.level(up_to_c);
-        let Some(range) = &outweighs.range_c else {
-            let none = &outweighs.not_reached;
-            return match (none.len(), outweighs.unknown.len()) {
-                (0, _) => None,
-                (_, 0) => Some(format!(
-                    "Under none of these rules does the shift of {title} outweigh the precipitation spread up to {up_to}."
-                )),
-                _ => Some(format!(
-                    "The shift of {title} does not outweigh the precipitation spread up to {up_to} under {}; it cannot be asked under {}.",
-                    self.names(none),
-                    self.names(&outweighs.unknown)
-                )),
+        let up_to = self.reader.level(self.measure.levels.last()?.level_c);
+        let (by_chance, not_reached): (Vec<usize>, Vec<usize>) = outweighs
+            .not_reached
+            .iter()
+            .copied()
+            .partition(|at| self.measure.rules[*at].may_outweigh_by_chance());
+        let title = format!("the shift of {}", self.measure.measure.title);
+        let mut said: Vec<String> = Vec::new();
+        if let Some(range) = &outweighs.range_c {
+            let under = self.under(&self.all_but(&range.without));
+            said.push(format!(
+                "{under}, {title} outweighs the precipitation spread from {} of warming on{}",
+                self.warming(range),
+                self.of_own()
+            ));
+        }
+        let subject = |said: &[String]| if said.is_empty() { title.clone() } else { "it".to_owned() };
+        if !not_reached.is_empty() {
+            let spread = if said.is_empty() { " outweigh the precipitation spread" } else { "" };
+            let under = self.names_or_all(&not_reached, "any of these rules");
+            said.push(format!("{} does not{spread} up to {up_to} under {under}", subject(&said)));
+        }
+        if !by_chance.is_empty() {
+            let under = self.names_or_all(&by_chance, "any of these rules");
+            let whether = if said.is_empty() {
+                format!("whether {title} outweighs the precipitation spread")
+            } else {
+                "whether it does".to_owned()
             };
-        };
-        let [low, high] = [range.lowest, range.highest].map(|at_c| self.reader.between_levels_bare(at_c));
-        let word = self.reader.units.warming().word;
-        let from =
-            if low == high { format!("about {low} {word}") } else { format!("{low} to {high} {word}") };
-        let of_own = match own {
-            Crossing::At { level_c, .. } => {
-                format!(" ({} under the study's own rules)", self.reader.between_levels(level_c))
-            }
-            Crossing::NotReached { .. } | Crossing::Unknown => String::new(),
-        };
-        let reached = self.rules() - range.without.len();
-        let under = if range.without.is_empty() {
-            "each of these rules".to_owned()
-        } else {
-            format!("{reached} of {} rules", self.rules())
-        };
-        let mut said = format!(
-            "Under {under} the shift of {title} outweighs the precipitation spread from {from} of warming on{of_own}"
-        );
-        if !outweighs.not_reached.is_empty() {
-            said += &format!("; it does not up to {up_to} under {}", self.names(&outweighs.not_reached));
+            said.push(format!("{whether} up to {up_to}, these realizations cannot tell under {under}"));
+        }
+        if said.is_empty() {
+            return None;
         }
         if !outweighs.unknown.is_empty() {
-            said += &format!("; it cannot be asked under {}", self.names(&outweighs.unknown));
+            said.push(format!("it cannot be asked under {}", self.names(&outweighs.unknown)));
         }
-        said += ".";
         let falls_back: Vec<usize> = self
-            .measure
-            .rules
-            .iter()
-            .enumerate()
-            .filter(|(at, rule)| {
-                self.panel.rules[*at].tuned.is_tuned
-                    && matches!(rule.outweighs, Crossing::At { until_c: Some(_), .. })
-            })
-            .map(|(at, _)| at)
+            .in_use()
+            .filter(|at| matches!(self.measure.rules[*at].outweighs, Crossing::At { until_c: Some(_), .. }))
             .collect();
-        if !falls_back.is_empty() {
-            said += &format!(" At a higher level it no longer does under {}.", self.names(&falls_back));
+        let falls_back = if falls_back.is_empty() {
+            String::new()
+        } else {
+            format!(" At a higher level it no longer does under {}.", self.names(&falls_back))
+        };
+        Some(format!("{}.{falls_back}", sentence(&said.join("; "))))
+    }
+
+    /// Places of the rules that were tuned, the study's own first.
+    fn in_use(&self) -> impl Iterator<Item = usize> {
+        (0..self.panel.rules.len()).filter(|at| self.panel.rules[*at].tuned.is_tuned)
+    }
+
+    fn all_but(&self, without: &[usize]) -> Vec<usize> {
+        self.in_use().filter(|at| !without.contains(at)).collect()
+    }
+
+    /// `Under each of these rules`, `Under 2 of 6 rules`.
+    fn under(&self, of: &[usize]) -> String {
+        match (of.len(), self.rules()) {
+            (some, all) if some == all => "Under each of these rules".to_owned(),
+            (some, all) => format!("Under {some} of {all} rules ({})", self.names(of)),
         }
-        Some(said)
+    }
+
+    fn names_or_all(&self, of: &[usize], all: &str) -> String {
+        if of.len() == self.rules() { all.to_owned() } else { self.names(of) }
+    }
+
+    /// `about +1.4 °C`, `+1.2 to +1.4 °C`.
+    fn warming(&self, range: &RangeOverRules) -> String {
+        let [low, high] = [range.lowest, range.highest].map(|at_c| self.reader.between_levels_bare(at_c));
+        let word = self.reader.units.warming().word;
+        if low == high { format!("about {low} {word}") } else { format!("{low} to {high} {word}") }
+    }
+
+    /// ` (+1.3 °C under the study's own rules, by chance +1.2 to +1.4)`.
+    fn of_own(&self) -> String {
+        let own = &self.measure.rules[0];
+        let Crossing::At { level_c, .. } = own.outweighs else { return String::new() };
+        let range = ends_in_words(own, self.reader);
+        let range = range.map_or(String::new(), |range| format!(", Monte Carlo range {range}"));
+        format!(" ({}{range}, under the study's own rules)", self.reader.between_levels(level_c))
     }
 
     /// Which levels all rules answer alike, and of every other which rule says what.
     fn by_level(&self) -> String {
         let levels = &self.measure.levels;
-        let title = &self.measure.measure.title;
+        let whether =
+            format!("whether the shift of {} outweighs the precipitation spread", self.measure.measure.title);
         let alike = |weight: Weight| -> Vec<&LevelOverRules> {
             levels.iter().filter(|level| level.saying(weight).len() == self.rules()).collect()
         };
-        let named = |of: &[&LevelOverRules]| -> String {
-            let names: Vec<String> = of.iter().map(|level| self.reader.level(level.level_c)).collect();
-            match names.split_last() {
-                Some((last, [])) => last.clone(),
-                Some((last, others)) => format!("{} and {last}", others.join(", ")),
-                None => String::new(),
-            }
-        };
-        let firm =
-            [(Weight::DoesNotOutweigh, "it does not outweigh it"), (Weight::Outweighs, "it outweighs it")];
-        let firm = firm.map(|(weight, does)| (alike(weight), does));
-        let told: Vec<String> = firm
+        let [no, yes] = [Weight::DoesNotOutweigh, Weight::Outweighs].map(alike);
+        let open: Vec<&LevelOverRules> = levels
             .iter()
-            .filter(|(levels, _)| !levels.is_empty())
-            .map(|(levels, does)| format!("at {} {does}", named(levels)))
+            .filter(|level| !no.iter().chain(&yes).any(|alike| alike.level_c == level.level_c))
             .collect();
-        let mut said = Vec::new();
-        let is_open = |level: &&LevelOverRules| {
-            !firm.iter().any(|(alike, _)| alike.iter().any(|of| of.level_c == level.level_c))
+        let told: Vec<String> = [(&no, "it does not"), (&yes, "it does")]
+            .into_iter()
+            .filter(|(levels, _)| !levels.is_empty())
+            .map(|(levels, does)| format!("at {} ({does})", self.levels_in_words(levels)))
+            .collect();
+        let mut said = vec![match (told.is_empty(), open.is_empty()) {
+            (true, _) => format!("At no level do these rules answer alike {whether}."),
+            (false, true) => {
+                format!("These rules answer alike at every level {whether}: {}.", told.join(", "))
+            }
+            (false, false) => format!("These rules answer alike {whether} {}.", told.join(" and ")),
+        }];
+        // Levels of which the same is to be said are told together.
+        let is_same = |a: &&LevelOverRules, b: &&LevelOverRules| {
+            WEIGHTS.iter().all(|weight| a.saying(*weight) == b.saying(*weight))
         };
-        let open: Vec<&LevelOverRules> = levels.iter().filter(is_open).collect();
-        if !told.is_empty() {
-            let all = if open.is_empty() { " at every level" } else { "" };
-            said.push(format!(
-                "Whether the shift of {title} outweighs the precipitation spread is answered alike under each of these rules{all}: {}.",
-                told.join(", and ")
-            ));
-        }
-        said.extend(open.iter().map(|level| self.level(level)));
+        said.extend(open.chunk_by(is_same).map(|levels| self.level(levels)));
         let has = |weight: Weight| open.iter().any(|level| !level.saying(weight).is_empty());
         if has(Weight::CannotTell) {
             said.push(
@@ -152,7 +171,7 @@ impl Panel<'_> {
         }
         if has(Weight::NoRatio) {
             said.push(
-                "Not to be asked: realizations without a value, a reference that does not spread, or too few realizations to know how sure the \
+                "Cannot be asked: realizations without a value, a reference that does not spread, or too few realizations to know how sure the \
                  ratio is."
                     .to_owned(),
             );
@@ -160,41 +179,45 @@ impl Panel<'_> {
         said.join(" ")
     }
 
-    /// `At +3 °C the answer hangs on the rule: the shift of 1 April SWE outweighs the precipitation spread under ...`.
-    fn level(&self, level: &LevelOverRules) -> String {
-        let title = &self.measure.measure.title;
-        let mut groups: Vec<(Weight, &[usize])> = WEIGHTS
-            .map(|weight| (weight, level.saying(weight)))
-            .into_iter()
-            .filter(|(_, of)| !of.is_empty())
-            .collect();
-        // The largest is told last, as the others; of a few rules the names are shorter.
-        let largest =
-            (0..groups.len()).rev().max_by_key(|at| groups[*at].1.len()).filter(|at| groups[*at].1.len() > 2);
+    /// `+1 °C, +2 °C and +3 °C`.
+    fn levels_in_words(&self, of: &[&LevelOverRules]) -> String {
+        let names: Vec<String> = of.iter().map(|level| self.reader.level(level.level_c)).collect();
+        match names.split_last() {
+            Some((last, others)) if !others.is_empty() => format!("{} and {last}", others.join(", ")),
+            Some((last, _)) => last.clone(),
+            None => String::new(),
+        }
+    }
+
+    /// `At +3 °C the answer hangs on the rule: it outweighs under A; it does not under the others.`
+    fn level(&self, levels: &[&LevelOverRules]) -> String {
+        let Some(level) = levels.first() else { return String::new() };
+        let mut groups: Vec<(Weight, &[usize])> = WEIGHTS.map(|weight| (weight, level.saying(weight))).into();
+        groups.retain(|(_, of)| !of.is_empty());
+        // The largest is told last, as the others; where it is small, too, names are plainer.
+        let largest = (0..groups.len()).max_by_key(|at| groups[*at].1.len());
+        let largest = largest.filter(|at| groups[*at].1.len() > 2);
         if let Some(largest) = largest {
             let group = groups.remove(largest);
             groups.push(group);
         }
+        let count = groups.len();
         let told: Vec<String> = groups
             .iter()
             .enumerate()
             .map(|(at, (weight, of))| {
-                let is_last = at + 1 == groups.len() && largest.is_some();
-                let under = match (is_last, groups.len()) {
-                    (true, 1) => "each of these rules".to_owned(),
-                    (true, _) => "the others".to_owned(),
-                    (false, _) => self.names(of),
+                let under = match (count, largest) {
+                    (1, _) => "each of these rules".to_owned(),
+                    (_, Some(_)) if at + 1 == count => "the others".to_owned(),
+                    _ => self.names(of),
                 };
-                let what = if at == 0 { format!("the shift of {title}") } else { "it".to_owned() };
-                let object = if at == 0 { "the precipitation spread" } else { "it" };
-                match weight {
-                    Weight::Outweighs => format!("{what} outweighs {object} under {under}"),
-                    Weight::DoesNotOutweigh => format!("{what} does not outweigh {object} under {under}"),
-                    Weight::CannotTell => {
-                        format!("{what} against {object} is too near to call under {under}")
-                    }
-                    Weight::NoRatio => format!("{what} against {object} is not to be asked under {under}"),
-                }
+                let does = match weight {
+                    Weight::Outweighs => "outweighs",
+                    Weight::DoesNotOutweigh => "does not",
+                    Weight::CannotTell => "is too near to call",
+                    Weight::NoRatio => "cannot be asked",
+                };
+                format!("it {does} under {under}")
             })
             .collect();
         let own_is_open = level.cannot_tell.contains(&0) || level.no_ratio.contains(&0);
@@ -206,7 +229,7 @@ impl Panel<'_> {
         } else {
             ""
         };
-        format!("At {} {how}{}.", self.reader.level(level.level_c), told.join("; "))
+        format!("At {} {how}{}.", self.levels_in_words(levels), told.join("; "))
     }
 
     fn beside_chance(&self, at: usize, level: &LevelOverRules) -> Option<String> {

@@ -2,9 +2,10 @@
 
 use super::super::super::numbers::{DASH, fixed, precision, signed};
 use super::super::super::reader::Reader;
+use super::ends_in_words;
 use crate::figures::rule_in_words;
 use crate::findings::{
-    Crossing, LevelOfRule, MeasureByRule, OfRule, PanelRule, RulePanel, Weight, is_at_bound,
+    Crossing, LevelOfRule, MeasureByRule, OfRule, PanelRule, Rule, RulePanel, Weight, is_at_bound,
 };
 use crate::season::{Kind, Outcome};
 use maud::{Markup, html};
@@ -34,10 +35,11 @@ pub(super) fn tuning(panel: &RulePanel, reader: Reader) -> Markup {
 }
 
 fn is_tuned(panel: &RulePanel, rule: &PanelRule) -> &'static str {
-    match (rule.tuned.is_tuned, panel.is_tuned_to_peak_alone) {
-        (true, false) => "yes",
-        (true, true) => "to the peak alone",
-        (false, _) => "no",
+    match (rule.rule, rule.tuned.is_tuned, panel.is_tuned_to_peak_alone) {
+        (Rule::StudysOwn, ..) => "what others are tuned to",
+        (_, true, false) => "yes",
+        (_, true, true) => "to the peak alone",
+        (_, false, _) => "no",
     }
 }
 
@@ -56,23 +58,27 @@ fn melt_factors(rule: &PanelRule, reader: Reader) -> String {
 /// A measure's shifts and ratios, rule by rule, and from which warming on it outweighs.
 pub(super) fn shifts(panel: &RulePanel, measure: &MeasureByRule, reader: Reader) -> Markup {
     let kind = measure.measure.kind;
+    // Without a level above the reference there is nothing to outweigh from.
+    let has_from = measure.rules.iter().any(|rule| rule.outweighs != Crossing::Unknown);
     let rows = panel.rules.iter().zip(&measure.rules).filter(|(rule, _)| rule.tuned.is_tuned);
     html! { div.scroll { table {
         caption {
             "Median change of " (measure.measure.title) " ± its Monte Carlo error, and times the half precipitation spread it points to, by rule and level"
             @if kind == Kind::AmountMm { ", " (reader.units.depth().word) }
-            "; (?) marks what is too near to call. Last: from which warming on it outweighs, with its Monte Carlo range. As in "
+            "; (?) marks what is too near to call."
+            @if has_from { " Last: from which warming on it outweighs, with its Monte Carlo range." }
+            " As in "
             code { "tables/rule-panel.csv" } "."
         }
         thead { tr {
             th.text scope="col" { "Rule" }
             @for level in &measure.levels { th scope="col" { (reader.level(level.level_c)) } }
-            th scope="col" { "Outweighs from" }
+            @if has_from { th scope="col" { "Outweighs from" } }
         } }
         tbody { @for (rule, found) in rows { tr {
             th.text scope="row" { (rule_in_words(rule.rule, reader.units)) }
             @for level in &found.levels { td { (cell(level, kind, reader)) } }
-            td { (from_where(found, reader)) }
+            @if has_from { td { (from_where(found, reader)) } }
         } } }
     } } }
 }
@@ -99,14 +105,7 @@ fn cell(level: &LevelOfRule, kind: Kind, reader: Reader) -> String {
 
 /// `+1.3 °C (+1.2 to +1.5)`, `not up to +4 °C (+3.8 to above +4.0)`.
 fn from_where(found: &OfRule, reader: Reader) -> String {
-    let Some(highest_c) = found.levels.last().map(|level| level.level_c) else { return DASH.to_owned() };
-    let end = |at_c: Option<f64>| match at_c {
-        Some(at_c) => reader.between_levels_bare(at_c),
-        None => format!("above {}", reader.between_levels_bare(highest_c)),
-    };
-    let range = found.outweighs_range.map(|range| [end(range.q05_c), end(range.q95_c)]);
-    let range = range.filter(|[low, high]| low != high);
-    let range = range.map_or(String::new(), |[low, high]| format!(" ({low} to {high})"));
+    let range = ends_in_words(found, reader).map_or(String::new(), |range| format!(" ({range})"));
     match found.outweighs {
         Crossing::At { level_c, until_c } => {
             let until = until_c.map(|until_c| format!(", until {}", reader.between_levels_bare(until_c)));
