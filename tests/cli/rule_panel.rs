@@ -141,6 +141,30 @@ fn replayed_years_are_the_records_years() {
     assert!(basin.read("mine/briefing.html").contains("1990's weather at +2 °C: 1 April SWE of "));
 }
 
+/// Where fewer realizations are stated than the study has, table and page say so; and with no level but the reference there is no panel, and a
+/// note why.
+#[test]
+fn fewer_realizations_and_a_lone_level_are_said() {
+    let basin = demo("\n[findings.rule_panel]\nrealizations = 5\n");
+    let ended = basin.run("study mine.toml --into few");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    for (name, expected) in [("realizations", "5"), ("realizations_of_study", "10")] {
+        let cells = column(&basin, "few/tables/rule-panel.csv", name);
+        assert!(cells.iter().all(|(_, cell)| cell == expected), "{name}: {cells:?}");
+    }
+    let page = basin.read("few/briefing.html");
+    assert!(page.contains("by the study's first 5 of 10 realizations, the same under each"));
+    assert!(page.contains("The study's first 5 of 10 realizations of 4 years"), "the figure");
+    let lone = basin.read("mine.toml").replacen("levels_c = [0, 1, 2, 3, 4]", "levels_c = [0]", 1);
+    basin.write("lone.toml", &lone);
+    let checked = basin.run("check lone.toml");
+    let said = checked.stdout + &checked.stderr;
+    assert!(checked.status == 0 && said.contains("there is no level but the reference"), "{said}");
+    let ended = basin.run("study lone.toml --into lone");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    assert!(json(&basin, "lone/summary.json")["findings"]["rule_panel"].is_null());
+}
+
 /// Every fault has its place and says how to mend it.
 #[test]
 fn what_cannot_be_asked_is_refused() {

@@ -179,6 +179,24 @@ mod tests {
         assert!(tuned.is_tuned);
     }
 
+    /// Where the target never goes, the peak is tuned to and the melt factors stay; a rule under which the snow goes is not tuned.
+    #[test]
+    fn without_a_melt_out_the_peak_alone_is_tuned_to() {
+        let target = Fit { median_melt_out_day: Outcome::NotGone, ..TARGET };
+        let tuned = found(target, |[catch, _]| (320.0 * catch, Outcome::NotGone));
+        assert!(tuned.is_tuned && (tuned.catch_factor - 1.25).abs() < 1e-3, "{tuned:?}");
+        assert_eq!(tuned.melt_factor, 1.0);
+        assert!(!found(target, |[catch, _]| (320.0 * catch, Outcome::Value(300.0))).is_tuned);
+    }
+
+    /// By hand: 4 mm of catch for each of its factor and 300 mm besides come to 316 at most, at the greatest factor.
+    #[test]
+    fn a_search_that_ends_at_a_bound_is_known() {
+        let tuned = found(TARGET, |[catch, _]| (300.0 + 4.0 * catch, Outcome::Value(230.0)));
+        assert!(!tuned.is_tuned && tuned.catch_factor == 4.0 && is_at_bound(tuned.catch_factor), "{tuned:?}");
+        assert_eq!([0.25, 0.26, 1.0, 3.9, 3.99].map(is_at_bound), [true, false, false, false, true]);
+    }
+
     /// Snow that goes a month early whatever its factors, and a peak that stays a tenth of the target's.
     #[test]
     fn what_cannot_be_tuned_is_said() {

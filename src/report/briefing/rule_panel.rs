@@ -118,3 +118,6 @@ fn range_of_changes(kind: Kind, low: f64, high: f64, reader: Reader) -> String {
         None => both,
     }
 }
+
+#[cfg(test)]
+mod tests;
