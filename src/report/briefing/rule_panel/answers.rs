@@ -18,7 +18,7 @@ pub(super) fn answers(
     reader: Reader,
 ) -> Vec<String> {
     let asked = Panel { panel, measure, reader };
-    let mut said: Vec<String> = asked.from_where().into_iter().collect();
+    let mut said: Vec<String> = asked.outweighs_from().into_iter().collect();
     said.push(asked.by_level());
     let level = measure.levels.iter().enumerate().find(|(_, level)| Some(level.level_c) == told_c);
     said.extend(level.and_then(|(at, level)| asked.beside_chance(at, level)));
@@ -44,7 +44,7 @@ impl Panel<'_> {
     }
 
     /// The headline of the study, rule by rule; nothing where no rule can be asked.
-    fn from_where(&self) -> Option<String> {
+    fn outweighs_from(&self) -> Option<String> {
         let outweighs = &self.measure.outweighs;
         let up_to = self.reader.level(self.measure.levels.last()?.level_c);
         let (by_chance, not_reached): (Vec<usize>, Vec<usize>) = outweighs
