@@ -104,11 +104,13 @@ impl Panel<'_> {
         self.in_use().filter(|at| !without.contains(at)).collect()
     }
 
-    /// `Under each of these rules`, `Under 2 of 6 rules`.
+    /// `Under each of these rules`, `Under 5 of 6 rules`, `Under 1 of 6 rules (gradient −5 °C per km)`.
     fn under(&self, of: &[usize]) -> String {
         match (of.len(), self.rules()) {
             (some, all) if some == all => "Under each of these rules".to_owned(),
-            (some, all) => format!("Under {some} of {all} rules ({})", self.names(of)),
+            (some, all) if 2 * some <= all => format!("Under {some} of {all} rules ({})", self.names(of)),
+            // The fewer others are named behind.
+            (some, all) => format!("Under {some} of {all} rules"),
         }
     }
 
@@ -165,14 +167,14 @@ impl Panel<'_> {
         let has = |weight: Weight| open.iter().any(|level| !level.saying(weight).is_empty());
         if has(Weight::CannotTell) {
             said.push(
-                "Too near to call: the 90 % Monte Carlo interval of the ratio lies on both sides of 1."
+                "Too near to call: the 90 % Monte Carlo interval of the shift over the half spread lies on both sides of 1."
                     .to_owned(),
             );
         }
         if has(Weight::NoRatio) {
             said.push(
                 "Cannot be asked: realizations without a value, a reference that does not spread, or too few realizations to know how sure the \
-                 ratio is."
+                 answer is."
                     .to_owned(),
             );
         }

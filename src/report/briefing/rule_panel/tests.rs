@@ -65,7 +65,7 @@ fn rules_that_differ_are_told_though_the_studys_own_cannot_tell() {
     assert_eq!(said.len(), 3, "{said:?}");
     assert!(
         said[0].starts_with(
-            "Under 2 of 3 rules (the study's own rules, degree-day factor without season), the shift of 1 April SWE outweighs the precipitation \
+            "Under 2 of 3 rules, the shift of 1 April SWE outweighs the precipitation \
              spread from +0.5 to +1.0 °C of warming on (+1.0 °C, Monte Carlo range "
         ),
         "{}",
