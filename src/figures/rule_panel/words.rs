@@ -77,6 +77,11 @@ impl Words {
             (all, _) => counted(all, "realization"),
         };
         let runs = format!("{runs} of {}", counted(years, "year"));
+        let chance = if of.has_ranges {
+            "The 5–95 % range shows chance between realizations, not day-to-day variation; "
+        } else {
+            "Realizations are too few for a 5–95 % range; "
+        };
         Some(Self {
             sample: sentence(&format!("{runs}, the same under every rule and level")),
             axis: format!("Change of {} from the reference, {depth}", measure.measure.title),
@@ -84,8 +89,7 @@ impl Words {
             key: key(of),
             caption: format!(
                 "{} Each row holds the change of {} under one rule in place of the study's own, over {runs}, the same at each warming level.{shown} \
-                 Lines show chance between realizations, not day-to-day variation; the distance between rows shows what the choice of the rule \
-                 does. Numbers stand in tables/rule-panel.csv.",
+                 {chance}the distance between rows shows what the choice of the rule does. Numbers stand in tables/rule-panel.csv.",
                 FIGURE.question, measure.measure.title,
             ),
             alt: format!("{title}. A row of marks for each rule."),
