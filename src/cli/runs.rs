@@ -136,7 +136,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     Ok(Findings {
         surface: Some(surface),
         by_year,
-        break_even: Some(break_even),
+        break_even: Some(break_even).filter(|found| !found.levels.is_empty()),
         parameter_spread,
         record_odds: RecordOdds::of(&refit_odds, &warming.levels_c, warming.reference),
         rule_panel,

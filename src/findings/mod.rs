@@ -68,7 +68,7 @@ pub use by_year::{ByYear, ByYearQuestions, MeasureByYear};
 pub use cells::Cells;
 pub use chance::{Chance, Chances};
 pub use coincidence::{Coincidence, CoincidenceLevel, Depends, LowSnowGivenDry, OwnMedians};
-pub use crossing::{Crossing, CrossingRange, crossing};
+pub use crossing::{Crossing, CrossingRange, Judged, crossing, judged};
 pub use crossover::{BandCorrelation, Crossover, CrossoverRange, Dominates};
 pub use detection::{Detection, DetectionLevel, DetectionPeriod, WarmingRate};
 pub use distribution::{DOTS, Distribution};

@@ -72,6 +72,9 @@ impl Estimate {
 
 /// The sample standard deviation; none below two values or where it is not a number.
 pub(super) fn standard_deviation(values: &[f64]) -> Option<f64> {
+    if values.len() < 2 {
+        return None;
+    }
     let n = values.len() as f64;
     let mean = values.iter().sum::<f64>() / n;
     let squares = values.iter().map(|value| (value - mean) * (value - mean)).sum::<f64>();
@@ -129,6 +132,14 @@ impl Ranked {
 mod tests {
     use super::super::quantile;
     use super::*;
+
+    /// An identity: nothing varies among no values, or one, that a deviation could be told of. By hand: of 1 and 3 it is the root of 2.
+    #[test]
+    fn fewer_than_two_values_have_no_deviation() {
+        assert_eq!([standard_deviation(&[]), standard_deviation(&[7.0])], [None, None]);
+        assert_eq!(standard_deviation(&[1.0, 3.0]), Some(2.0_f64.sqrt()));
+        assert_eq!(Estimate::new(5.0, []).monte_carlo_error, None);
+    }
 
     /// A resample's quantiles are those of the values written out as often as they were drawn.
     #[test]

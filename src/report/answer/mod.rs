@@ -108,7 +108,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
             .filter(changed)
             .map(|level| verdict::how_much(findings, headline, level, reader))
             .collect(),
-        yardstick: yardstick::yardstick(findings, headline, reader),
+        yardstick: yardstick::yardstick(findings, headline, cause(findings, warming), reader),
         how_sure: how_sure::how_sure(findings, headline, reader),
         parameters: parameters::parameters(findings, headline, reader),
         timing: (0..findings.levels_c.len()).filter_map(|at| place::timing(findings, at, reader)).collect(),
