@@ -52,7 +52,8 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let caption = format!(
         "{} Shares of the variance of the {} at the reference and at each warming level, of single years and of means over more of \
          them, by {}.{which} The 5–95 % ranges are over resampled realizations: chance of the simulation, not day-to-day variation. \
-         A share depends on the two levels that are held against each other.",
+         The warming is largest where it holds more than chance as a whole (realization and year together) and more than how differently \
+         they take it. A share depends on the two levels that are held against each other.",
         FIGURE.question,
         measure.measure.title,
         ensemble(findings)

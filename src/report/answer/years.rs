@@ -27,7 +27,7 @@ pub(super) fn years(findings: &Findings, cause: &str, reader: Reader) -> Vec<Str
     said
 }
 
-/// From which averaging period on the warming holds the largest share, levels of one answer together.
+/// From which averaging period on the warming holds the largest share of the three that are named, levels of one answer together.
 fn holds_most(partitions: &[Partition], findings: &Findings, cause: &str, reader: Reader) -> Option<String> {
     let reference_c = findings.levels_c[findings.reference];
     let mut groups: Vec<(HoldsMost, Vec<String>)> = Vec::new();
@@ -54,7 +54,8 @@ fn holds_most(partitions: &[Partition], findings: &Findings, cause: &str, reader
     let groups: Vec<String> = groups.iter().map(said).collect();
     (!groups.is_empty()).then(|| {
         format!(
-            "Of all that makes years, or means over several, differ, the {cause} holds the largest share {}.",
+            "Years, and means over several, differ by the {cause}, by chance, and by how differently they take it: of these three \
+             the {cause} holds the largest share {}.",
             groups.join("; ")
         )
     })

@@ -155,10 +155,12 @@ fn partitions(measure: &MeasureByYear, reader: Reader) -> Markup {
     html! { @if !measure.partitions.is_empty() { div.scroll { table {
         caption {
             "Shares of the variance of the " (measure.measure.title) " at the reference and one level, of single years and of means over more. They add up \
-             to 100 %. Where a realization holds a single period, the period's chance counts with the realization's."
+             to 100 %. Where a realization holds a single period, the period's chance counts with the realization's. The warming is largest \
+             where it holds more than chance as a whole (realization and year together), and more than how differently they take it (both \
+             columns by the warming together)."
         }
         thead { tr { @for name in [
-            "Level", "Years averaged", "Warming", "Realization", "Warming by realization", "Year", "Warming by year", "Warming is largest",
+            "Level", "Years averaged", "Warming", "Realization", "Realization by warming", "Year", "Year by warming", "Warming is largest",
         ] { th scope="col" { (name) } } } }
         tbody { @for of in &measure.partitions { @for (row, period) in of.periods.iter().enumerate() { tr {
             th scope="row" { (reader.level(of.level_c)) }

@@ -51,12 +51,16 @@ fn texts<const N: usize>(names: [&str; N]) -> Vec<String> {
     names.map(str::to_owned).into()
 }
 
-/// One row a measure, level and averaging period; the shares of one row add up to 1.
+/// One row a measure, level and averaging period; the five parts of one row add up to 1, and so do level, chance (realization
+/// and year) and interaction (both by level), which are what the warming is held against.
 fn partitions(found: &ByYear, units: UnitSystem) -> Vec<u8> {
     let warming = units.warming();
     let mut header = vec!["measure".to_owned(), format!("level_{}", warming.suffix)];
     header.extend(texts(["averaged_years", "periods_per_realization", "years_left_over"]));
     for share in ["level", "realization", "level_by_realization", "year", "level_by_year"] {
+        header.extend(columns(&format!("share_{share}")));
+    }
+    for share in ["chance", "interaction"] {
         header.extend(columns(&format!("share_{share}")));
     }
     header.extend(columns("level_less_largest_other"));
@@ -79,6 +83,8 @@ fn partitions(found: &ByYear, units: UnitSystem) -> Vec<u8> {
                 row.extend(ranged(Some(period.level_by_realization)));
                 row.extend(ranged(period.year));
                 row.extend(ranged(period.level_by_year));
+                row.extend(ranged(Some(period.chance)));
+                row.extend(ranged(Some(period.interaction)));
                 row.extend(ranged(Some(period.level_less_largest_other)));
                 row.push(word.to_owned());
                 row.push(from.map_or(String::new(), |years| years.to_string()));
