@@ -122,6 +122,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
             seed: scenario.seed,
             low_snow_below_quantile: asked.low_snow.below_quantile,
             warming_rate: asked.warming_rate,
+            redraws_years: scenario.realizations.generator.redraws_years(),
             record: &record_years,
             bands: &ready.basin.bands,
         },

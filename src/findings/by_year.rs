@@ -28,6 +28,8 @@ pub struct ByYearQuestions<'a> {
     pub low_snow_below_quantile: f64,
     /// The user's rate of warming, if one is stated.
     pub warming_rate: Option<WarmingRate>,
+    /// Whether realizations are the record's own years in another order.
+    pub redraws_years: bool,
     /// The record's own years, run at every level; may be empty.
     pub record: &'a [RecordYear],
     /// The bands, from the lowest.
@@ -41,6 +43,9 @@ pub struct ByYear {
     pub method: &'static str,
     /// Single years of a level, over all realizations.
     pub simulated_years: usize,
+    /// Whether realizations are the record's own years in another order: how often its lowest come back at the reference then
+    /// rests on these very years.
+    pub redraws_years: bool,
     /// Of the headline measure, and of the first volume.
     pub measures: Vec<MeasureByYear>,
     /// Low-snow odds of the headline measure; none where few of the reference's years have snow.
@@ -100,6 +105,7 @@ impl ByYear {
         Some(Self {
             method: RANGE_METHOD,
             simulated_years: realizations * length,
+            redraws_years: asked.redraws_years,
             measures: told
                 .filter_map(|(at, measure)| MeasureByYear::of(measure, &years(at), asked, &resamples))
                 .collect(),

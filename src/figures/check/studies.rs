@@ -211,6 +211,7 @@ impl Study<'_> {
                 seed: 7,
                 low_snow_below_quantile: 0.2,
                 warming_rate: None,
+                redraws_years: true,
                 record: &[],
                 bands,
             },

@@ -132,13 +132,22 @@ fn worst_year(worst: &WorstYear, by_year: &ByYear, findings: &Findings, reader: 
             None => format!("rarer than one in {simulated} simulated years"),
         })
     };
+    let rests_on = if by_year.redraws_years {
+        " The realizations are the record's own winters in another order: at the reference this rests on those very winters, and says \
+         little more than that count."
+    } else {
+        ""
+    };
     Some(format!(
-        "As little as in {}, the record's lowest year in this model ({}), comes {} at the reference, {} at {}.",
+        "As little as in {}, the record's lowest year in this model ({}), comes {} at the reference, {} at {}; in the record itself it \
+         is {} in {}.{rests_on}",
         worst.water_year,
         reader.amount(worst.swe_mm),
         said(reference)?,
         said(at)?,
-        reader.level(at?.level_c)
+        reader.level(at?.level_c),
+        worst.record_years_as_low,
+        worst.record_years
     ))
 }
 

@@ -111,11 +111,19 @@ fn worst_years(findings: &Findings, found: &ByYear, reader: Reader) -> Markup {
     html! { @if !found.worst_years.is_empty() { div.scroll { table {
         caption {
             "The record's years with least SWE: one simulated year in so many has as little or less, with its 5–95 % range. No number goes beyond the "
-            (fixed(found.simulated_years as f64, 0)) " simulated years of a level."
+            (fixed(found.simulated_years as f64, 0)) " simulated years of a level. Beside it how many of the record's own years have as little or less."
+            @if found.redraws_years {
+                " The realizations are the record's own winters in another order, so that at the reference the simulated number says little more."
+            }
         }
-        (heading(findings, "Year of the record", reader))
+        thead { tr {
+            th scope="col" { "Year of the record" }
+            th scope="col" { "In the record" }
+            @for name in levels::names(findings, reader) { th scope="col" { (name) } }
+        } }
         tbody { @for year in &found.worst_years { tr {
             th scope="row" { (year.water_year) ", " (reader.amount(year.swe_mm)) }
+            td { (year.record_years_as_low) " in " (year.record_years) }
             @for level in &year.levels { td { @match level.return_period_years {
                 Some(period) => {
                     "1 in " (years_of(period.value))

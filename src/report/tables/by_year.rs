@@ -251,7 +251,7 @@ fn worst_years(found: &ByYear, units: UnitSystem) -> Vec<u8> {
     let (warming, depth) = (units.warming(), units.depth());
     let mut header = vec!["water_year".to_owned(), format!("swe_{}", depth.suffix)];
     header.push(format!("level_{}", warming.suffix));
-    header.extend(texts(["years_as_low", "simulated_years"]));
+    header.extend(texts(["record_years_as_low", "record_years", "years_as_low", "simulated_years"]));
     header.extend(columns("chance"));
     header.push("chance_bound".to_owned());
     header.extend(columns("return_period_years"));
@@ -259,7 +259,9 @@ fn worst_years(found: &ByYear, units: UnitSystem) -> Vec<u8> {
         year.levels.iter().map(move |level| {
             let mut row = vec![year.water_year.to_string(), depth.of(year.swe_mm).to_string()];
             row.push(warming.of(level.level_c).to_string());
-            row.extend([level.years_as_low, found.simulated_years].map(|count| count.to_string()));
+            let counts =
+                [year.record_years_as_low, year.record_years, level.years_as_low, found.simulated_years];
+            row.extend(counts.map(|count| count.to_string()));
             row.extend(ranged(Some(level.chance)));
             row.push(optional(level.bound));
             row.extend(ranged(level.return_period_years));
