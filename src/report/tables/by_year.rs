@@ -199,6 +199,8 @@ fn low_snow(found: &ByYear, units: UnitSystem) -> Vec<u8> {
     header.push("chance_bound".to_owned());
     header.extend(columns("chance_ratio_to_reference"));
     header.extend(columns("chance_ratio_of_record_climate_to_level"));
+    header.extend(columns("attributable_fraction_of_record_climate"));
+    header.push("reference_years_at_limit".to_owned());
     let rows = found.low_snow.iter().flat_map(|low| {
         low.levels.iter().map(move |level| {
             let colder = low.without_warming.iter().find(|of| of.level_c == level.level_c);
@@ -209,6 +211,8 @@ fn low_snow(found: &ByYear, units: UnitSystem) -> Vec<u8> {
             row.push(optional(level.bound));
             row.extend(ranged(Some(level.chance_ratio)));
             row.extend(ranged(colder.and_then(|of| of.chance_ratio)));
+            row.extend(ranged(colder.and_then(|of| of.attributable_fraction)));
+            row.push(low.years_at_limit.to_string());
             row
         })
     });
