@@ -123,6 +123,8 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
             low_snow_below_quantile: asked.low_snow.below_quantile,
             warming_rate: asked.warming_rate,
             redraws_years: scenario.realizations.generator.redraws_years(),
+            changes_mean: mean_change_sd_pct != 0.0,
+            levels_change_precipitation: warming.warming.changes_precipitation(&warming.levels_c),
             record: &record_years,
             bands: &ready.basin.bands,
         },

@@ -212,6 +212,8 @@ impl Study<'_> {
                 low_snow_below_quantile: 0.2,
                 warming_rate: None,
                 redraws_years: true,
+                changes_mean: false,
+                levels_change_precipitation: false,
                 record: &[],
                 bands,
             },

@@ -18,6 +18,7 @@ pub(super) use slopes::{per_degree, percent};
 pub use years::{in_years, range, years_of};
 
 use super::reader::Reader;
+use crate::figures::cause;
 use crate::findings::{Findings, LevelFindings, MeasureFindings, Spread};
 use crate::perturb::Warming;
 use crate::season::{Kind, LEAST_REFERENCE_MM};
@@ -71,24 +72,13 @@ pub struct Asked {
     pub answer: Vec<String>,
 }
 
-/// What a shift comes of: `warming`, or that with the change of precipitation that the study states for its levels.
-fn cause(findings: &Findings, warming: &Warming) -> &'static str {
-    let is_stated =
-        |level_c: &f64| warming.precipitation.factor(*level_c).iter().any(|factor| *factor != 1.0);
-    let wet_days_change = warming.wet_day_intensity_pct_per_c.is_some_and(|pct_per_c| pct_per_c != 0.0);
-    if wet_days_change || findings.levels_c.iter().any(is_stated) {
-        "warming with its stated change of precipitation"
-    } else {
-        "warming"
-    }
-}
-
 /// Puts the findings into a reader's words.
 pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -> Answer {
     let Some(headline) = findings.basin.first() else {
         return Answer { verdict: "Nothing was measured.".to_owned(), ..Answer::default() };
     };
-    let verdict = verdict::verdict(findings, headline, cause(findings, warming), reader);
+    let cause = cause(warming.changes_precipitation(&findings.levels_c));
+    let verdict = verdict::verdict(findings, headline, cause, reader);
     if is_scarce(headline) {
         return Answer { verdict, ..Answer::default() };
     }
@@ -111,7 +101,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
         slopes: slopes::slopes(findings, reader),
         cases: slopes::cases(findings, reader),
         tipping: tipping::tipping(findings, reader),
-        years: years::years(findings, cause(findings, warming), reader),
+        years: years::years(findings, cause, reader),
         chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
     };
     answer.at_a_glance = at_a_glance(findings, headline, &answer, reader);

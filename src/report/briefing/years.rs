@@ -5,7 +5,7 @@ use super::super::numbers::{DASH, fixed, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
 use super::{Figures, levels};
-use crate::figures::Part;
+use crate::figures::{Part, cause};
 use crate::findings::{
     ByYear, Crossing, Detection, Findings, HoldsMost, LowRuns, LowSnow, MeasureByYear, Partition, Ranged,
     TYPES, Tails,
@@ -23,7 +23,7 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer, figures: &Figures<'_>)
         (worst_years(findings, found, reader))
         @if let Some(runs) = &found.low_runs { (low_runs(findings, runs, reader)) }
         @for measure in found.measures.iter().take(1) {
-            (partitions(measure, reader))
+            (partitions(measure, cause(found.levels_change_precipitation), reader))
             @if let Some(detection) = &measure.detection { (detected(detection, reader)) }
         }
         details {
@@ -151,7 +151,7 @@ fn low_runs(findings: &Findings, runs: &LowRuns, reader: Reader) -> Markup {
     } } }
 }
 
-fn partitions(measure: &MeasureByYear, reader: Reader) -> Markup {
+fn partitions(measure: &MeasureByYear, cause: &str, reader: Reader) -> Markup {
     let holds = |of: &Partition| match of.warming_holds_most {
         HoldsMost::Always => "always".to_owned(),
         HoldsMost::From { years, .. } => format!("from {years}-year means on"),
@@ -163,12 +163,12 @@ fn partitions(measure: &MeasureByYear, reader: Reader) -> Markup {
     html! { @if !measure.partitions.is_empty() { div.scroll { table {
         caption {
             "Shares of the variance of the " (measure.measure.title) " at the reference and one level, of single years and of means over more. They add up \
-             to 100 %. Where a realization holds a single period, the period's chance counts with the realization's. The warming is largest \
+             to 100 %. Where a realization holds a single period, the period's chance counts with the realization's. The " (cause) " is largest \
              where it holds more than chance as a whole (realization and year together), and more than how differently they take it (both \
-             columns by the warming together)."
+             columns by level together)."
         }
         thead { tr { @for name in [
-            "Level", "Years averaged", "Warming", "Realization", "Realization by warming", "Year", "Year by warming", "Warming is largest",
+            "Level", "Years averaged", "Level's share", "Realization", "Realization by level", "Year", "Year by level", "Level is largest",
         ] { th scope="col" { (name) } } } }
         tbody { @for of in &measure.partitions { @for (row, period) in of.periods.iter().enumerate() { tr {
             th scope="row" { (reader.level(of.level_c)) }
