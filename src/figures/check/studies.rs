@@ -213,7 +213,8 @@ impl Study<'_> {
                 warming_rate: None,
                 redraws_years: true,
                 changes_mean: false,
-                levels_change_precipitation: false,
+                // So that either wording is laid out.
+                levels_change_precipitation: self.levels_c.len() > 5,
                 record: &[],
                 bands,
             },

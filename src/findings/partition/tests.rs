@@ -151,6 +151,30 @@ fn ranges_hold_the_truth_nine_times_in_ten() {
     assert!((0.82..=0.97).contains(&share), "{share}");
 }
 
+/// SN-10: chance dominates early, the signal late (Hawkins & Sutton 2009, BAMS 90:1095; their equations from memory). Of years
+/// that vary by 10 about a mean that warming lowers by D, the level's part of N-year means is (D/2)^2 against 100/N of chance:
+/// 1 against 100 to 3.3 at D = 2, never the larger; 25 against 100, 20, 10 and 3.3 at D = 10, from five years on; 225 against
+/// 100 and less at D = 30, always. 400 realizations of 30 years know the part of chance to 1 % in single years and to 7 % in
+/// 30-year means, the level's at D = 10 to 2 % of it: 0.02 of the shares.
+#[test]
+fn chance_dominates_at_small_warming_and_in_short_means() {
+    let early =
+        |change: f64| Model { realization: 0.0, year: 10.0, by_realization: 0.0, by_year: 0.0, change };
+    let found = [-2.0, -10.0, -30.0].map(|change| {
+        let [reference, level] = early(change).draw(11, 400, 30);
+        let found = Partition::of(1.0, &reference.view(), &level.view(), &Resamples::new(1, 400)).unwrap();
+        for period in &found.periods {
+            let (level, chance) = (change * change / 4.0, 100.0 / period.years as f64);
+            let expected = level / (level + chance);
+            assert!((period.level.value - expected).abs() < 0.02, "{period:?}, not {expected}");
+            assert!((period.chance.value - (1.0 - expected)).abs() < 0.02, "{period:?}");
+        }
+        found.warming_holds_most
+    });
+    let expected = [HoldsMost::Never, HoldsMost::From { years: 5, is_blurred: false }, HoldsMost::Always];
+    assert_eq!(found, expected);
+}
+
 /// Words turn with the numbers: no change is never the largest, a change far above all else always is, and a tie cannot be
 /// told.
 #[test]
