@@ -122,6 +122,19 @@ fn without_the_warming_so_far() {
         assert_eq!(*fraction, Value::Null);
     }
     assert_eq!(said.contains("come on top"), said.contains("not what caused any year"), "{said}");
+    // With more of the warming taken away the odds move beyond chance, and the share is told.
+    basin.exchange("levels_c = [-0.5, 0, 2]", "levels_c = [-1, 0, 2]");
+    basin.exchange("count = 12", "count = 60");
+    let summary = study(&basin, "scenario.toml");
+    let colder = &summary["findings"]["by_year"]["low_snow"]["without_warming"][0];
+    assert!(number(&colder["chance_ratio"]["q05"]) > 1.0, "else nothing comes on top: {colder}");
+    let [value, low, high] = ["value", "q05", "q95"]
+        .map(|end| format!("{:.0}", 100.0 * number(&colder["attributable_fraction"][end])));
+    let told = format!(
+        "so that {value} % ({low} to {high} %) of them come on top (a sensitivity, not a formal attribution)"
+    );
+    let said = sentences(&summary).join("\n");
+    assert!(said.contains(&told), "{told}: {said}");
 }
 
 /// What a level does is named in full where it brings a change of precipitation: in the sentences of the variance and of the
