@@ -211,6 +211,10 @@ impl Study<'_> {
                 seed: 7,
                 low_snow_below_quantile: 0.2,
                 warming_rate: None,
+                redraws_years: true,
+                changes_mean: false,
+                // So that either wording is laid out.
+                levels_change_precipitation: self.levels_c.len() > 5,
                 record: &[],
                 bands,
             },

@@ -19,6 +19,7 @@ pub(super) use slopes::{per_degree, percent};
 pub use years::{in_years, range, years_of};
 
 use super::reader::Reader;
+use crate::figures::cause;
 use crate::findings::{Findings, LevelFindings, MeasureFindings, Spread};
 use crate::perturb::Warming;
 use crate::season::{Kind, LEAST_REFERENCE_MM};
@@ -72,35 +73,20 @@ pub struct Asked {
     pub answer: Vec<String>,
 }
 
-/// Whether the study states a change of precipitation with its levels.
-fn changes_precipitation(findings: &Findings, warming: &Warming) -> bool {
-    let is_stated =
-        |level_c: &f64| warming.precipitation.factor(*level_c).iter().any(|factor| *factor != 1.0);
-    let wet_days_change = warming.wet_day_intensity_pct_per_c.is_some_and(|pct_per_c| pct_per_c != 0.0);
-    wet_days_change || findings.levels_c.iter().any(is_stated)
-}
-
-/// What a shift comes of: `warming`, or that with the change of precipitation that the study states for its levels.
-fn cause(findings: &Findings, warming: &Warming) -> &'static str {
-    if changes_precipitation(findings, warming) {
-        "warming with its stated change of precipitation"
-    } else {
-        "warming"
-    }
-}
-
 /// Puts the findings into a reader's words.
 pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -> Answer {
     let Some(headline) = findings.basin.first() else {
         return Answer { verdict: "Nothing was measured.".to_owned(), ..Answer::default() };
     };
-    let verdict = verdict::verdict(findings, headline, cause(findings, warming), reader);
+    let changes_precipitation = warming.changes_precipitation(&findings.levels_c);
+    let cause = cause(changes_precipitation);
+    let on_top = if changes_precipitation { " on top of its stated change" } else { "" };
+    let verdict = verdict::verdict(findings, headline, cause, reader);
     if is_scarce(headline) {
         return Answer { verdict, ..Answer::default() };
     }
     let levels = || headline.levels.iter();
     let changed = |level: &&LevelFindings| level.shift.is_some();
-    let on_top = if changes_precipitation(findings, warming) { " on top of its stated change" } else { "" };
     let mut answer = Answer {
         at_a_glance: Vec::new(),
         verdict,
@@ -108,7 +94,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
             .filter(changed)
             .map(|level| verdict::how_much(findings, headline, level, reader))
             .collect(),
-        yardstick: yardstick::yardstick(findings, headline, cause(findings, warming), reader),
+        yardstick: yardstick::yardstick(findings, headline, cause, reader),
         how_sure: how_sure::how_sure(findings, headline, reader),
         parameters: parameters::parameters(findings, headline, reader),
         timing: (0..findings.levels_c.len()).filter_map(|at| place::timing(findings, at, reader)).collect(),
@@ -117,8 +103,8 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
         break_even: break_even::break_even(findings, headline, on_top, reader),
         slopes: slopes::slopes(findings, reader),
         cases: slopes::cases(findings, reader),
-        tipping: tipping::tipping(findings, cause(findings, warming), reader),
-        years: years::years(findings, cause(findings, warming), reader)
+        tipping: tipping::tipping(findings, cause, reader),
+        years: years::years(findings, cause, reader)
             .into_iter()
             .chain(record_odds::record_odds(findings, reader))
             .collect(),
