@@ -3,7 +3,6 @@
 use super::cells::Cells;
 use super::chance::Chance;
 use super::counts::{Counts, share};
-use super::low_snow::LOW_SNOW_BELOW_QUANTILE;
 use super::places::YearValues;
 use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Resamples};
@@ -89,6 +88,7 @@ pub struct LowSnowGivenDry {
 impl Coincidence {
     pub(super) fn of(
         values: &YearValues<'_>,
+        low_snow_below_quantile: f64,
         levels_c: &[f64],
         reference: usize,
         resamples: &Resamples,
@@ -96,7 +96,7 @@ impl Coincidence {
         let at = values.at(reference);
         let [median_precipitation_mm, median_temperature_c] = at.medians();
         let swe = sorted(at.years().map(|[swe_mm, ..]| swe_mm));
-        let low_snow_below_mm = quantile(&swe, LOW_SNOW_BELOW_QUANTILE);
+        let low_snow_below_mm = quantile(&swe, low_snow_below_quantile);
         let all = [median_precipitation_mm, median_temperature_c, low_snow_below_mm];
         if all.iter().any(|value| !value.is_finite()) {
             return None;
@@ -125,7 +125,7 @@ impl Coincidence {
             median_precipitation_mm,
             median_temperature_c,
             low_snow_below_mm,
-            low_snow_below_quantile: LOW_SNOW_BELOW_QUANTILE,
+            low_snow_below_quantile,
             levels: levels.collect(),
         })
     }
@@ -191,7 +191,7 @@ mod tests {
     /// By hand, eight years: precipitation 1 to 8, so that 1 to 4 are dry; temperature is such that years 1 and 2 are warm, 3 and 4
     /// cool; SWE is lowest in year 1 alone (type 8's 20 % of 8 values lies at 2.0: between the second value and the third by 0.0).
     /// With two degrees more all years are warm. Low snow given dry and warm: 1 of 2, given dry and cool 0 of 2: no ratio.
-    fn found() -> Coincidence {
+    fn found(low_snow_below_quantile: f64) -> Coincidence {
         let one = |values: [f64; 8], warming: f64| {
             Array3::from_shape_fn((2, 2, 8), |(level, _, year)| values[year] + warming * level as f64)
         };
@@ -200,12 +200,13 @@ mod tests {
         let swe = one([10.0, 20.0, 30.0, 40.0, 50.0, 60.0, 70.0, 80.0], 0.0);
         let values =
             YearValues { swe_mm: swe.view(), precipitation_mm: precipitation.view(), mean_c: mean_c.view() };
-        Coincidence::of(&values, &[0.0, 2.0], 0, &Resamples::new(1, 2)).expect("values in every year")
+        Coincidence::of(&values, low_snow_below_quantile, &[0.0, 2.0], 0, &Resamples::new(1, 2))
+            .expect("values in every year")
     }
 
     #[test]
     fn a_table_counted_by_hand() {
-        let found = found();
+        let found = found(0.2);
         let cells = |dry_warm, dry_cool, wet_warm, wet_cool| Cells { dry_warm, dry_cool, wet_warm, wet_cool };
         assert_eq!(found.levels[0].years, cells(4, 4, 4, 4));
         assert_eq!(found.levels[1].years, cells(8, 0, 8, 0));
@@ -222,6 +223,20 @@ mod tests {
         assert!(given.ratio.is_none(), "nothing over no low year");
         let warmed = found.levels[1].low_snow_given_dry;
         assert_eq!((chance(warmed.warm), chance(warmed.cool)), (Some(0.25), None), "an empty cell is none");
+    }
+
+    /// By hand, of the same years twice: type 8's 40 % of 16 values lies at 16*0.4 + 1.4/3 = rank 6.867, between the third year's SWE,
+    /// 30 mm, twice, and the fourth's: at 30 + 0.867*(40 - 30) = 38.667 mm with ranks 6 and 7. Years 1 to 3 are low: of the dry and warm
+    /// both, of the dry and cool one of two, twice as often.
+    #[test]
+    fn low_snow_is_what_the_user_says() {
+        let found = found(0.4);
+        assert_eq!(found.low_snow_below_quantile, 0.4);
+        assert!((found.low_snow_below_mm - (30.0 + 10.0 * (6.4 + 1.4 / 3.0 - 6.0))).abs() < 1e-9);
+        let given = found.levels[0].low_snow_given_dry;
+        let chance = |chance: Option<Chance>| chance.map(|chance| chance.estimate.value);
+        assert_eq!((chance(given.warm), chance(given.cool)), (Some(1.0), Some(0.5)));
+        assert_eq!(given.ratio.expect("low years of both").value, 2.0);
     }
 
     /// Two errors are 0.2: 1.21 and 0.79 lie apart from 1, 1.19 and 0.81 do not; without an error nobody can tell.

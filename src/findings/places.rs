@@ -57,6 +57,8 @@ pub struct PlacesQuestions<'a> {
     pub cool_mean_c: Option<&'a Array3<f64>>,
     /// Mean of the winter months over the record's years, `[level][band]`, degC.
     pub winter_mean_c: &'a [Vec<f64>],
+    /// A year is low in snow below this quantile of the headline SWE of the reference's single years.
+    pub low_snow_below_quantile: f64,
     /// The snow line lies where the headline SWE reaches this much, mm.
     pub snow_line_swe_mm: f64,
 }
@@ -83,7 +85,9 @@ impl Places {
             Crossover::all(&rows, &study.band_headline.view(), values, levels_c, reference, &resamples)
         });
         Some(Self {
-            coincidence: values.as_ref().and_then(|of| Coincidence::of(of, levels_c, reference, &resamples)),
+            coincidence: values.as_ref().and_then(|of| {
+                Coincidence::of(of, questions.low_snow_below_quantile, levels_c, reference, &resamples)
+            }),
             record_coincidence: None,
             snow_droughts: values
                 .as_ref()

@@ -86,7 +86,9 @@ fn dry_and_warm(found: &Coincidence, findings: &Findings, reader: Reader) -> Str
                     },
                 );
                 format!(
-                    " A dry year is low in snow with a chance of {} where it is warm, and {} where it is cool{ratio}",
+                    " A dry year is low in snow, below the {} % quantile of the reference's single years, with a chance of {} where it is warm, and {} where \
+                     it is cool{ratio}",
+                    fixed(100.0 * found.low_snow_below_quantile, 0),
                     chance(warm),
                     chance(cool)
                 )
@@ -132,8 +134,9 @@ fn of_record(found: &RecordCoincidence) -> String {
         format!(" Fisher's exact test of independence has p = {}: {verdict}.", fixed(p, 2))
     });
     let mut words = format!(
-        "In the record itself, {} years are dry and warm; in brackets Wilson's 95 % interval.{test} Low snow came in {} dry and warm years and in {} dry and cool ones.",
+        "In the record itself, {} years are dry and warm; in brackets Wilson's 95 % interval.{test} Low snow, below the {} % quantile of these years, came in {} dry and warm years and in {} dry and cool ones.",
         counted(found.dry_warm),
+        fixed(100.0 * found.low_snow_below_quantile, 0),
         counted(found.low_snow_given_dry_warm),
         counted(found.low_snow_given_dry_cool)
     );
