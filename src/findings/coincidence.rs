@@ -3,8 +3,7 @@
 use super::cells::Cells;
 use super::chance::Chance;
 use super::counts::{Counts, share};
-use super::places::YearValues;
-use super::quantile::{quantile, sorted};
+use super::reference_years::{Limits, YearValues};
 use super::resample::{Estimate, Resamples};
 use serde::Serialize;
 
@@ -93,21 +92,13 @@ impl Coincidence {
         reference: usize,
         resamples: &Resamples,
     ) -> Option<Self> {
-        let at = values.at(reference);
-        let [median_precipitation_mm, median_temperature_c] = at.medians();
-        let swe = sorted(at.years().map(|[swe_mm, ..]| swe_mm));
-        let low_snow_below_mm = quantile(&swe, low_snow_below_quantile);
-        let all = [median_precipitation_mm, median_temperature_c, low_snow_below_mm];
-        if all.iter().any(|value| !value.is_finite()) {
-            return None;
-        }
+        let limits = Limits::of(&values.at(reference), low_snow_below_quantile)?;
         let levels = levels_c.iter().enumerate().map(|(level, level_c)| {
             let at = values.at(level);
             // The four cells without low snow, and the same four with it.
             let counts = at.counted::<8>(|[swe_mm, precipitation_mm, mean_c]| {
-                let cell =
-                    Cells::place(precipitation_mm <= median_precipitation_mm, mean_c <= median_temperature_c);
-                Some(cell + 4 * usize::from(swe_mm < low_snow_below_mm))
+                let cell = Cells::place(precipitation_mm <= limits.precipitation_mm, mean_c <= limits.mean_c);
+                Some(cell + 4 * usize::from(swe_mm < limits.low_snow_mm))
             });
             let mut level = level_of(
                 *level_c,
@@ -115,16 +106,15 @@ impl Coincidence {
                 own_medians(&at.counted(about(at.medians())), resamples),
                 resamples,
             );
-            // Of years that are mostly bare no share is low.
-            if low_snow_below_mm <= 0.0 {
+            if !limits.has_snow() {
                 level.low_snow_given_dry = LowSnowGivenDry { warm: None, cool: None, ratio: None };
             }
             level
         });
         Some(Self {
-            median_precipitation_mm,
-            median_temperature_c,
-            low_snow_below_mm,
+            median_precipitation_mm: limits.precipitation_mm,
+            median_temperature_c: limits.mean_c,
+            low_snow_below_mm: limits.low_snow_mm,
             low_snow_below_quantile,
             levels: levels.collect(),
         })

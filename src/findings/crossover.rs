@@ -2,8 +2,8 @@
 //! section 10).
 
 use super::elevations::{Line, LineRange, Row};
-use super::places::YearValues;
 use super::quantile::{quantile, sorted};
+use super::reference_years::YearValues;
 use super::resample::Resamples;
 use ndarray::{Array2, ArrayView3};
 use serde::Serialize;

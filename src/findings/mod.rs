@@ -35,6 +35,7 @@ mod ranged;
 mod record;
 mod record_coincidence;
 mod record_range;
+mod reference_years;
 mod replayed_years;
 mod resample;
 mod rule_panel;

@@ -4,18 +4,17 @@ use super::answer::Findings;
 use super::at_risk::AtRisk;
 use super::band_change::BandChangeLevel;
 use super::coincidence::Coincidence;
-use super::counts::Counts;
 use super::crossover::Crossover;
 use super::elevations::Row;
-use super::quantile::{quantile, sorted};
 use super::record_coincidence::RecordCoincidence;
+use super::reference_years::YearValues;
 use super::resample::Resamples;
 use super::snow_drought::SnowDroughts;
 use super::snow_line::{Grounds, SnowLine};
 use crate::basin::Band;
 use crate::ensemble::Seasons;
 use crate::season::Measure;
-use ndarray::{Array3, ArrayView2, ArrayView3, Axis};
+use ndarray::{Array3, Axis};
 use serde::Serialize;
 
 /// What is found of places and of kinds of years.
@@ -103,61 +102,6 @@ impl Places {
                 reference,
             ),
         })
-    }
-}
-
-/// Single years of the basin, `[level][realization][year]`.
-pub(super) struct YearValues<'a> {
-    /// The headline SWE, mm.
-    pub swe_mm: ArrayView3<'a, f64>,
-    /// Precipitation over the basin before its date, mm.
-    pub precipitation_mm: ArrayView3<'a, f64>,
-    /// Mean temperature at the station before its date, degC.
-    pub mean_c: ArrayView3<'a, f64>,
-}
-
-/// The same at one level, `[realization][year]`.
-pub(super) struct LevelYears<'a> {
-    pub swe_mm: ArrayView2<'a, f64>,
-    pub precipitation_mm: ArrayView2<'a, f64>,
-    pub mean_c: ArrayView2<'a, f64>,
-}
-
-impl YearValues<'_> {
-    pub fn at(&self, level: usize) -> LevelYears<'_> {
-        LevelYears {
-            swe_mm: self.swe_mm.index_axis(Axis(0), level),
-            precipitation_mm: self.precipitation_mm.index_axis(Axis(0), level),
-            mean_c: self.mean_c.index_axis(Axis(0), level),
-        }
-    }
-}
-
-impl LevelYears<'_> {
-    /// SWE, precipitation and temperature of every year.
-    pub fn years(&self) -> impl Iterator<Item = [f64; 3]> {
-        let both = self.precipitation_mm.iter().zip(self.mean_c.iter());
-        self.swe_mm
-            .iter()
-            .zip(both)
-            .map(|(swe_mm, (precipitation_mm, mean_c))| [*swe_mm, *precipitation_mm, *mean_c])
-    }
-
-    /// Medians of precipitation and temperature.
-    pub fn medians(&self) -> [f64; 2] {
-        [1, 2].map(|at| quantile(&sorted(self.years().map(|year| year[at])), 0.5))
-    }
-
-    /// Years by kind, realization by realization.
-    pub fn counted<const K: usize>(&self, kind: impl Fn([f64; 3]) -> Option<usize>) -> Counts<K> {
-        let (realizations, years) = self.swe_mm.dim();
-        let mut counts = vec![[0; K]; realizations];
-        for (at, year) in self.years().enumerate() {
-            if let Some(kind) = kind(year) {
-                counts[at / years][kind] += 1;
-            }
-        }
-        Counts(counts)
     }
 }
 
