@@ -63,8 +63,9 @@ pub enum Dominates {
 /// The crossover over resampled realizations.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct CrossoverRange {
-    /// 5-95 % of the elevation; temperature everywhere counts as above all bands, precipitation everywhere as below.
-    pub elevation: LineRange,
+    /// 5-95 % of the elevation; where one of the two decides everywhere it counts as outside the bands, on the side to which that
+    /// moves it. Resamples that are the other way about are left out, and none is left of them alone.
+    pub elevation: Option<LineRange>,
     /// Share of the resamples with temperature below and precipitation above an elevation.
     pub share_found: f64,
     /// Share of the resamples that say the same as all realizations together, whatever the elevation.
@@ -190,11 +191,16 @@ impl Dominates {
 impl CrossoverRange {
     /// Nothing where a resample says nothing, or there are none.
     fn of(found: Dominates, resampled: &[Dominates]) -> Option<Self> {
-        let line = |one: &Dominates| match one {
-            Dominates::Crossover { elevation_m } => Some(Line::At { elevation_m: *elevation_m }),
-            Dominates::Temperature => Some(Line::AboveHighestBand),
-            Dominates::Precipitation => Some(Line::BelowLowestBand),
-            Dominates::Reversed { .. } | Dominates::Unknown => None,
+        let is_reversed = matches!(found, Dominates::Reversed { .. });
+        let line = |one: &Dominates| match (*one, is_reversed) {
+            (Dominates::Crossover { elevation_m }, false) | (Dominates::Reversed { elevation_m }, true) => {
+                Some(Line::At { elevation_m })
+            }
+            (Dominates::Temperature, false) | (Dominates::Precipitation, true) => {
+                Some(Line::AboveHighestBand)
+            }
+            (Dominates::Precipitation, false) | (Dominates::Temperature, true) => Some(Line::BelowLowestBand),
+            _ => None,
         };
         if resampled.is_empty() || resampled.iter().any(|one| one.is_like(Dominates::Unknown)) {
             return None;
@@ -242,7 +248,8 @@ mod tests {
         assert!((elevation_m - 1500.0).abs() < 1e-9, "{elevation_m}");
         let range = found.range.expect("resamples");
         assert_eq!((range.share_found, range.share_alike), (1.0, 1.0), "realizations that are alike");
-        let [low, high] = [range.elevation.q05_m, range.elevation.q95_m].map(|end| end.expect("an end"));
+        let range = range.elevation.expect("crossovers");
+        let [low, high] = [range.q05_m, range.q95_m].map(|end| end.expect("an end"));
         assert!((low - 1500.0).abs() < 1e-6 && (high - 1500.0).abs() < 1e-6);
     }
 
@@ -253,9 +260,10 @@ mod tests {
         assert_eq!(at(&[]).found, Dominates::Unknown);
         assert_eq!(at(&[[0.0, 0.0]]).found, Dominates::Unknown, "snow that does not vary");
         assert_eq!(at(&[[0.0, 0.0], [4.0, 3.0]]).found, Dominates::Temperature, "bare bands decide nothing");
-        let Dominates::Reversed { elevation_m } = at(&[[3.0, 4.0], [4.0, 3.0]]).found else {
-            panic!("not reversed")
-        };
+        let reversed = at(&[[3.0, 4.0], [4.0, 3.0]]);
+        let Dominates::Reversed { elevation_m } = reversed.found else { panic!("not reversed") };
+        let range = reversed.range.and_then(|range| range.elevation).expect("resamples that are alike");
+        assert!((range.q05_m.expect("an end") - 1500.0).abs() < 1e-6, "{range:?}");
         assert!((elevation_m - 1500.0).abs() < 1e-9);
         let lowest = at(&[[4.0, 3.0], [3.0, 4.0], [4.0, 3.0]]).found;
         assert!(

@@ -6,6 +6,7 @@ use super::band_change::BandChangeLevel;
 use super::coincidence::Coincidence;
 use super::crossover::Crossover;
 use super::elevations::Row;
+use super::ranged::RANGE_METHOD;
 use super::record_coincidence::RecordCoincidence;
 use super::reference_years::YearValues;
 use super::resample::Resamples;
@@ -20,6 +21,8 @@ use serde::Serialize;
 /// What is found of places and of kinds of years.
 #[derive(Debug, Clone, PartialEq, Serialize)]
 pub struct Places {
+    /// How ranges over resampled realizations are made, and what has none.
+    pub method: String,
     /// Dry and warm years of the realizations; none where there is no cool season.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub coincidence: Option<Coincidence>,
@@ -40,6 +43,10 @@ pub struct Places {
     #[serde(skip_serializing_if = "Option::is_none")]
     pub at_risk: Option<AtRisk>,
 }
+
+/// What has no range, and why.
+const WITHOUT_RANGE: &str = "Winter means are those of the record's years: the elevation of freezing, which bands are at risk and their \
+                             area rest on no realization and have no range";
 
 /// What is asked.
 #[derive(Clone, Copy)]
@@ -84,6 +91,10 @@ impl Places {
             Crossover::all(&rows, &study.band_headline.view(), values, levels_c, reference, &resamples)
         });
         Some(Self {
+            method: format!(
+                "snow_line_resampled, snow_line_rise_resampled_m_per_c, volume_resampled_hm3, volume_share_resampled and the crossover's \
+                 range: {RANGE_METHOD}; of an elevation none also where that end lies outside the bands. {WITHOUT_RANGE}."
+            ),
             coincidence: values.as_ref().and_then(|of| {
                 Coincidence::of(of, questions.low_snow_below_quantile, levels_c, reference, &resamples)
             }),
@@ -93,13 +104,14 @@ impl Places {
                 .and_then(|of| SnowDroughts::of(of, levels_c, reference, &resamples)),
             crossover: crossover.unwrap_or_default(),
             band_change: BandChangeLevel::all(&findings.bands, &swe_mm, levels_c, reference),
-            snow_line: SnowLine::of(&grounds, questions.snow_line_swe_mm, levels_c, reference),
+            snow_line: SnowLine::of(&grounds, questions.snow_line_swe_mm, levels_c, reference, &resamples),
             at_risk: AtRisk::of(
                 bands,
                 &swe_mm.index_axis(Axis(0), reference),
                 winter_mean_c,
                 levels_c,
                 reference,
+                &resamples,
             ),
         })
     }
