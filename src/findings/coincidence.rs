@@ -176,7 +176,9 @@ impl Depends {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::perturb::stream;
     use ndarray::Array3;
+    use rand_distr::{Distribution, StandardNormal};
 
     /// By hand, eight years: precipitation 1 to 8, so that 1 to 4 are dry; temperature is such that years 1 and 2 are warm, 3 and 4
     /// cool; SWE is lowest in year 1 alone (type 8's 20 % of 8 values lies at 2.0: between the second value and the third by 0.0).
@@ -239,5 +241,31 @@ mod tests {
         assert_eq!(of(0.81, Some(0.1)), Depends::CannotTell);
         assert_eq!(of(2.0, None), Depends::CannotTell);
         assert_eq!(Depends::of(None), Depends::CannotTell);
+    }
+
+    /// Halves that know nothing of each other coincide in a quarter of years: of 2000 the share's standard deviation about medians is
+    /// 0.25/sqrt(2000) = 0.0056 (hypergeometric), the factor's four times that; four of them are allowed.
+    #[test]
+    fn independent_halves_coincide_in_a_quarter_of_years() {
+        let mut random = stream(6000, 0);
+        let mut normal = |_: (usize, usize, usize)| -> f64 { StandardNormal.sample(&mut random) };
+        let [mm, mean_c] = [(); 2].map(|()| Array3::from_shape_fn((1, 100, 20), &mut normal));
+        let values = YearValues { swe_mm: mm.view(), precipitation_mm: mm.view(), mean_c: mean_c.view() };
+        let found =
+            Coincidence::of(&values, 0.2, &[0.0], 0, &Resamples::new(1, 100)).expect("values in every year");
+        let level = &found.levels[0];
+        assert!((level.dry_warm.expect("years").estimate.value - 0.25).abs() < 4.0 * 0.0056);
+        assert!((level.dependence.expect("dry years").value - 1.0).abs() < 16.0 * 0.0056);
+    }
+
+    /// Chances of 54 and 25 % make a ratio of 2.16.
+    #[test]
+    fn a_ratio_of_chances() {
+        let counts = Counts(vec![[46, 75, 100, 100, 54, 25, 0, 0]]);
+        let own = own_medians(&Counts(vec![[1; 4]]), &Resamples::new(1, 1));
+        let given = level_of(0.0, &counts, own, &Resamples::new(1, 1)).low_snow_given_dry;
+        let ratio = given.ratio.expect("low years of both");
+        assert!((ratio.value - 2.16).abs() < 1e-12, "{ratio:?}");
+        assert_eq!(ratio.monte_carlo_error, None, "of a single realization");
     }
 }

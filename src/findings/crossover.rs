@@ -220,7 +220,9 @@ impl CrossoverRange {
 mod tests {
     use super::super::places::tests::bands_at;
     use super::*;
+    use crate::perturb::stream;
     use ndarray::Array3;
+    use rand_distr::{Distribution, StandardNormal};
 
     /// By construction: temperature and precipitation are uncorrelated, both with a variance of 1, and SWE = 100 + 3*(b*P - a*T), so
     /// that |r(SWE,P)| = b/sqrt(a*a + b*b), |r(SWE,T)| = a/sqrt(a*a + b*b). With a/b of 4/3, 3/4 at 1000 and 2000 m the two are 0.6
@@ -269,5 +271,33 @@ mod tests {
         assert!(
             matches!(lowest, Dominates::Crossover { elevation_m } if (elevation_m - 1500.0).abs() < 1e-9)
         );
+    }
+
+    /// The same construction of normal years with noise of 2*3 mm in every band of its own: both correlations shrink alike, so that the
+    /// truth stays 1500 m by symmetry. Of 200 studies a 5-95 % range is to hold it in 180; the binomial standard error is 2.1 %, and the
+    /// percentile bootstrap of 30 realizations falls one or two percent short, so 82 to 97 %.
+    #[test]
+    fn ranges_hold_the_true_elevation_nine_times_in_ten() {
+        let rows = Row::all(&bands_at(&[1000.0, 2000.0]));
+        let rows: Vec<&Row> = rows.iter().collect();
+        let holds = (0..200).filter(|study| {
+            let mut random = stream(4000 + study, 0);
+            let mut normal = |_: (usize, usize)| -> f64 { StandardNormal.sample(&mut random) };
+            let [mean_c, mm] = [(); 2].map(|()| Array2::from_shape_fn((30, 6), &mut normal));
+            let noise = [(); 2].map(|()| Array2::from_shape_fn((30, 6), &mut normal));
+            let swe_mm = Array3::from_shape_fn((2, 30, 6), |(band, realization, year)| {
+                let at = [realization, year];
+                let [a, b] = [[4.0, 3.0], [3.0, 4.0]][band];
+                100.0 + 3.0 * (b * mm[at] - a * mean_c[at] + 2.0 * noise[band][at])
+            });
+            let resamples = Resamples::new(*study, 30);
+            let found = Crossover::at(0.0, &rows, &swe_mm.view(), [&mean_c, &mm], &resamples);
+            let range = found.range.and_then(|range| range.elevation).expect("a range");
+            // An end outside the bands lies beyond the truth on its side.
+            range.q05_m.map_or(range.reaches_below_lowest_band, |low_m| low_m <= 1500.0)
+                && range.q95_m.map_or(range.reaches_above_highest_band, |high_m| high_m >= 1500.0)
+        });
+        let share = holds.count() as f64 / 200.0;
+        assert!((0.82..=0.97).contains(&share), "{share}");
     }
 }

@@ -72,6 +72,10 @@ impl Estimate {
 
 /// The sample standard deviation; none below two values or where it is not a number.
 pub(super) fn standard_deviation(values: &[f64]) -> Option<f64> {
+    // The sum over no values, 0, over n - 1, -1, would be an error of 0.
+    if values.len() < 2 {
+        return None;
+    }
     let n = values.len() as f64;
     let mean = values.iter().sum::<f64>() / n;
     let squares = values.iter().map(|value| (value - mean) * (value - mean)).sum::<f64>();
@@ -161,6 +165,15 @@ mod tests {
         let error = Estimate::new(18.6, resamples.each(mean)).monte_carlo_error.unwrap();
         assert!((error / 4.8973 - 1.0).abs() < 0.12, "{error}");
     }
+
+    /// One realization drawn again is the same: its error is not 0 but unknown.
+    #[test]
+    fn a_single_realization_has_no_error() {
+        let found = Estimate::new(1.0, Resamples::new(1, 1).each(|_| Some(1.0)));
+        assert_eq!(found.monte_carlo_error, None);
+        assert_eq!([standard_deviation(&[]), standard_deviation(&[1.0])], [None, None]);
+    }
+
     /// A resample of n holds a given value with the chance 1 - (1 - 1/n)^n: 0.6513 for n = 10 and 0.6384 for n = 30 (Efron &
     /// Tibshirani 1993), so that extremes are understated. 10 000 resamples know it to 0.005; 0.02 is four times that.
     #[test]

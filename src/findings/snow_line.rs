@@ -131,7 +131,9 @@ impl SnowLine {
 mod tests {
     use super::super::places::tests::bands_at;
     use super::*;
+    use crate::perturb::stream;
     use ndarray::Array3;
+    use rand_distr::{Distribution, StandardNormal};
 
     /// Geometry: under a constant gradient of -6.5 degC/km the line of 0 degC rises 1000/6.5 = 153.85 m for each degC, under -5.0
     /// 200 m, under -8.13 123 m, all within the published 120 to 200 m (123 m per degC: Hantel & Maurer 2011, Meteorol. Z. 20:267);
@@ -191,5 +193,33 @@ mod tests {
         assert!((resampled.q95_m.expect("high") - 1625.0).abs() < 1e-9, "{resampled:?}");
         let alone = SnowLine::of(&grounds, 100.0, &[0.0, 1.0], 0, &Resamples::new(1, 1)).levels[1];
         assert_eq!((alone.snow_line_resampled, alone.snow_line_rise_resampled_m_per_c), (None, None));
+    }
+
+    /// The wedge above with normal noise of 15 mm in every band and realization of its own: the medians of the distribution stay the
+    /// wedge's, 1500 m and 150 m more for a degree. Of 200 studies of 31 realizations a 5-95 % range is to hold each truth in 180; the
+    /// binomial standard error is 2.1 %, and the percentile bootstrap of a median is off by a few percent, so 82 to 97 %.
+    #[test]
+    fn ranges_hold_the_true_line_nine_times_in_ten() {
+        let bands = bands_at(&[1300.0, 1700.0, 2100.0]);
+        let rows = Row::all(&bands);
+        let mut holds = [0; 2];
+        for study in 0..200 {
+            let mut random = stream(5000 + study, 0);
+            let swe_mm = Array3::from_shape_fn((2, 3, 31), |(level, band, _)| {
+                let noise: f64 = StandardNormal.sample(&mut random);
+                0.2 * (bands[band].elevation_m - 1000.0 - 150.0 * level as f64) + 15.0 * noise
+            });
+            let grounds = Grounds { rows: &rows, swe_mm: swe_mm.view(), winter_mean_c: &[] };
+            let found = SnowLine::of(&grounds, 100.0, &[0.0, 1.0], 0, &Resamples::new(study, 31));
+            let line = found.levels[0].snow_line_resampled.expect("resamples");
+            let [low_m, high_m] = [line.q05_m, line.q95_m].map(|end| end.expect("among the bands"));
+            let rise = found.levels[1].snow_line_rise_resampled_m_per_c.expect("among the bands");
+            holds[0] += u32::from((low_m..=high_m).contains(&1500.0));
+            holds[1] += u32::from((rise.q05..=rise.q95).contains(&150.0));
+        }
+        for holds in holds {
+            let share = f64::from(holds) / 200.0;
+            assert!((0.82..=0.97).contains(&share), "{share}");
+        }
     }
 }
