@@ -39,6 +39,7 @@ mod record;
 mod record_coincidence;
 mod record_odds;
 mod record_range;
+mod reference_years;
 mod replayed_years;
 mod resample;
 mod rule_panel;

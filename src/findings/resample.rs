@@ -72,6 +72,7 @@ impl Estimate {
 
 /// The sample standard deviation; none below two values or where it is not a number.
 pub(super) fn standard_deviation(values: &[f64]) -> Option<f64> {
+    // The sum over no values, 0, over n - 1, -1, would be an error of 0.
     if values.len() < 2 {
         return None;
     }
@@ -138,7 +139,9 @@ mod tests {
     fn fewer_than_two_values_have_no_deviation() {
         assert_eq!([standard_deviation(&[]), standard_deviation(&[7.0])], [None, None]);
         assert_eq!(standard_deviation(&[1.0, 3.0]), Some(2.0_f64.sqrt()));
-        assert_eq!(Estimate::new(5.0, []).monte_carlo_error, None);
+        // One realization drawn again is the same: its error is not 0 but unknown.
+        let found = Estimate::new(1.0, Resamples::new(1, 1).each(|_| Some(1.0)));
+        assert_eq!(found.monte_carlo_error, None);
     }
 
     /// A resample's quantiles are those of the values written out as often as they were drawn.

@@ -20,6 +20,7 @@ mod keys;
 mod normal;
 mod observed;
 mod parameter_sets;
+mod places;
 mod results;
 mod rule_panel;
 mod scenario_faults;

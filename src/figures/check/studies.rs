@@ -186,6 +186,7 @@ impl Study<'_> {
                 precipitation: &seasons.basin.measures[0].name,
                 cool_mean_c: Some(&cool_mean_c),
                 winter_mean_c: &winter_mean_c,
+                low_snow_below_quantile: 0.2,
                 snow_line_swe_mm: 100.0,
             },
             &findings,

@@ -2,6 +2,8 @@
 
 mod break_even;
 mod chance;
+mod dry_and_warm;
+mod elevations;
 mod how_sure;
 mod parameters;
 mod place;
@@ -44,6 +46,9 @@ pub struct Answer {
     pub timing: Vec<String>,
     /// Where.
     pub elevation: Option<String>,
+    /// What each band loses or gains, where the snow line lies, what snow is at risk, and what decides it at which elevation.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub elevations: Vec<String>,
     /// What it means for the volume of the melt season.
     pub volumes: Option<String>,
     /// How much more precipitation would make up for it.
@@ -60,6 +65,9 @@ pub struct Answer {
     /// What single years say: variance, low-snow odds, worst years, runs, tails, detection.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub years: Vec<String>,
+    /// How often years are dry and warm, what that does to the snow, and kinds of snow drought.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub dry_and_warm: Vec<String>,
     /// Could chance hide it?
     pub chances: Vec<String>,
 }
@@ -82,8 +90,10 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
     let cause = cause(changes_precipitation);
     let on_top = if changes_precipitation { " on top of its stated change" } else { "" };
     let verdict = verdict::verdict(findings, headline, cause, reader);
+    let dry_and_warm = dry_and_warm::dry_and_warm(findings, reader);
+    let elevations = elevations::elevations(findings, reader);
     if is_scarce(headline) {
-        return Answer { verdict, ..Answer::default() };
+        return Answer { verdict, dry_and_warm, elevations, ..Answer::default() };
     }
     let levels = || headline.levels.iter();
     let changed = |level: &&LevelFindings| level.shift.is_some();
@@ -99,6 +109,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
         parameters: parameters::parameters(findings, headline, reader),
         timing: (0..findings.levels_c.len()).filter_map(|at| place::timing(findings, at, reader)).collect(),
         elevation: place::elevation(findings, reader),
+        elevations,
         volumes: volumes::volumes(findings, reader),
         break_even: break_even::break_even(findings, headline, on_top, reader),
         slopes: slopes::slopes(findings, reader),
@@ -108,6 +119,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
             .into_iter()
             .chain(record_odds::record_odds(findings, reader))
             .collect(),
+        dry_and_warm,
         chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
     };
     answer.at_a_glance = at_a_glance(findings, headline, &answer, on_top, reader);
