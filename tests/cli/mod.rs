@@ -17,6 +17,7 @@ mod identities;
 mod intensity;
 mod interrupt;
 mod keys;
+mod methods;
 mod normal;
 mod observed;
 mod parameter_sets;

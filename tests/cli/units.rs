@@ -136,7 +136,9 @@ fn the_page_says_what_the_tables_hold() {
     let crossing_c = us["findings"]["basin"][0]["outweighs"]["level_c"].as_f64().unwrap();
     let table = basin.read("us/tables/yardsticks.csv");
     let at = header(&table).iter().position(|column| column == "outweighs_from_degF").unwrap();
-    assert!((rows(&table)[0][at].parse::<f64>().unwrap() - crossing_c * 1.8).abs() < 1e-9);
+    let is_it =
+        |row: &Vec<String>| row[at].parse::<f64>().is_ok_and(|from| (from - crossing_c * 1.8).abs() < 1e-9);
+    assert!(rows(&table).iter().any(is_it), "{crossing_c}");
     // So few realizations leave it at that.
     let verdict = us["answer"]["verdict"].as_str().unwrap();
     assert!(verdict.starts_with("Up to +3.6 °F these realizations cannot tell"), "{verdict}");

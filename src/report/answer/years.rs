@@ -312,7 +312,9 @@ pub fn in_years(chance: f64) -> String {
 pub fn range(of: Ranged, times: f64, decimals: usize, unit: &str) -> String {
     match (of.q05, of.q95) {
         (Some(low), Some(high)) => {
-            format!(" ({} to {}{unit})", fixed(times * low, decimals), fixed(times * high, decimals))
+            let [value, low, high] = [of.value, low, high].map(|number| fixed(times * number, decimals));
+            // All the same once rounded: a range would say no more than the number.
+            if low == value && high == value { String::new() } else { format!(" ({low} to {high}{unit})") }
         }
         _ => String::new(),
     }
