@@ -120,7 +120,7 @@ pub use surface::{
 };
 pub use tails::{TailChanges, Tails};
 pub use temperature_held::{HeldLevel, TemperatureHeldSpread};
-pub use three_way::{ThreeWay, ThreeWayShares};
+pub use three_way::{AveragedShares, ThreeWay, ThreeWayShares};
 pub use through_year::{LevelThroughYear, SweThroughYear};
 pub use tipping::{Asks, Criterion, CriterionLevel, FailureLine, TippingLevel};
 pub use variance::{TwoWay, VarianceShares};

@@ -136,8 +136,9 @@ fn the_page_says_what_the_tables_hold() {
     let crossing_c = us["findings"]["basin"][0]["outweighs"]["level_c"].as_f64().unwrap();
     let table = basin.read("us/tables/yardsticks.csv");
     let at = header(&table).iter().position(|column| column == "outweighs_from_degF").unwrap();
-    let is_it =
-        |row: &Vec<String>| row[at].parse::<f64>().is_ok_and(|from| (from - crossing_c * 1.8).abs() < 1e-9);
+    let is_it = |row: &csv::StringRecord| {
+        row[at].parse::<f64>().is_ok_and(|from| (from - crossing_c * 1.8).abs() < 1e-9)
+    };
     assert!(rows(&table).iter().any(is_it), "{crossing_c}");
     // So few realizations leave it at that.
     let verdict = us["answer"]["verdict"].as_str().unwrap();
