@@ -237,6 +237,13 @@ fn the_cold_demo_speaks_for_its_numbers() {
     assert!(of_one.starts_with("at +1 °C") && of_one.contains(&words), "{words}: {said:?}");
     assert_eq!(sides[0], Some(false), "of single years the weather is the largest part: {first}");
     assert!(first["warming_holds_most"]["warming_holds_most"] != "always");
+    // A headline: it stands at a glance, too.
+    let at_a_glance = summary["answer"]["at_a_glance"].as_array().unwrap().iter();
+    let asked = at_a_glance.filter(|asked| asked["question"] == "In single years, or only in long means?");
+    assert_eq!(
+        asked.map(|asked| asked["answer"][0].as_str().unwrap()).collect::<Vec<_>>(),
+        [said[0].as_str()]
+    );
     // Two degrees above the reference, or the level next to it, is what the sentence tells.
     let at_two = &by_year["low_snow"]["levels"][2];
     let percent = format!("{:.0} %", 100.0 * number(&at_two["chance"]["value"]));

@@ -122,7 +122,8 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
         dry_and_warm,
         chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
     };
-    answer.at_a_glance = at_a_glance(findings, headline, &answer, on_top, reader);
+    let by_averaging_period = years::by_averaging_period(findings, cause, reader);
+    answer.at_a_glance = at_a_glance(findings, headline, (&answer, by_averaging_period), on_top, reader);
     answer
 }
 
@@ -130,7 +131,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
 fn at_a_glance(
     findings: &Findings,
     headline: &MeasureFindings,
-    answer: &Answer,
+    (answer, by_averaging_period): (&Answer, Option<String>),
     on_top: &str,
     reader: Reader,
 ) -> Vec<Asked> {
@@ -145,6 +146,7 @@ fn at_a_glance(
     let asked = [
         ("How much?", how_much.chain(answer.elevation.clone()).collect()),
         ("Against which yardstick?", yardsticks.into_iter().flatten().cloned().collect()),
+        ("In single years, or only in long means?", by_averaging_period.into_iter().collect()),
         ("How sure is it?", answer.how_sure.clone()),
         ("Does it hang on the parameters?", answer.parameters.iter().skip(1).take(2).cloned().collect()),
         ("How much water is that?", answer.volumes.iter().cloned().collect()),

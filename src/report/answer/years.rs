@@ -14,9 +14,7 @@ pub(super) fn years(findings: &Findings, cause: &str, reader: Reader) -> Vec<Str
     };
     let headline = by_year.measures.first();
     let mut said: Vec<String> = Vec::new();
-    said.extend(
-        headline.map(|of| of.partitions.as_slice()).and_then(|of| holds_most(of, findings, cause, reader)),
-    );
+    said.extend(by_averaging_period(findings, cause, reader));
     said.extend(by_year.low_snow.as_ref().and_then(|low| low_snow(low, findings, reader)));
     said.extend(by_year.low_snow.as_ref().and_then(|low| own_share(low, by_year, findings)));
     said.extend(by_year.low_snow.as_ref().and_then(|low| without_warming(low, cause, reader)));
@@ -26,6 +24,12 @@ pub(super) fn years(findings: &Findings, cause: &str, reader: Reader) -> Vec<Str
     said.extend(by_year.measures.last().and_then(|of| types(of, findings, reader)));
     said.extend(headline.and_then(|of| detection(of, reader)));
     said
+}
+
+/// Whether the headline's warming holds more than chance in single years, or only in means over many.
+pub(super) fn by_averaging_period(findings: &Findings, cause: &str, reader: Reader) -> Option<String> {
+    let headline = findings.by_year.as_ref()?.measures.first()?;
+    holds_most(&headline.partitions, findings, cause, reader)
 }
 
 /// From which averaging period on the warming holds the largest share of the three that are named, levels of one answer together.
