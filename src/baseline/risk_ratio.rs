@@ -44,6 +44,9 @@ mod tests {
         for (number, expected) in [(found.ratio, 1.8178), (found.low_95, 1.4330), (found.high_95, 2.3059)] {
             assert!((number - expected).abs() < 1e-4, "{found:?}");
         }
+        // The error of the logarithm, printed as 0.121347, is a 3.92th of the interval's length in logarithms: exact to its digits.
+        let error = libm::log(found.high_95 / found.low_95) / (2.0 * 1.959_964);
+        assert!((error - 0.121_347).abs() < 1e-6, "{error}");
         assert_eq!(risk_ratio([0, 30], [8, 30]), None);
         assert_eq!(risk_ratio([8, 30], [0, 30]), None);
         let same = risk_ratio([8, 30], [8, 30]).unwrap();

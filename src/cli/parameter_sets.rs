@@ -17,7 +17,7 @@ pub(super) fn realizations_of_sets(ready: &Ready) -> u32 {
 
 /// Runs the first realizations of the study under every level from each set: its snow, the weather corrected for catch by its
 /// multipliers, the generator made anew from that, the same draws. Of each set period values of the headline and of melt-out are
-/// kept, of the basin; beside them those of `own`, the study's runs.
+/// kept, of the basin, and the headline's single years; beside them those of `own`, the study's runs.
 ///
 /// # Errors
 /// Those of a run.
@@ -32,16 +32,17 @@ pub(super) fn run_sets(
     let is_kept = |(at, measure): &(usize, &Measure)| *at == 0 || measure.name == MELT_OUT_DAY;
     let kept: Vec<usize> = all.iter().enumerate().filter(is_kept).map(|(at, _)| at).collect();
     let plan = Plan { realizations: sets.realizations, ..*plan };
-    let one = |parameters: &Parameters| -> Result<Array3<f64>, Halt> {
+    let one = |parameters: &Parameters| -> Result<[Array3<f64>; 2], Halt> {
         let of_set = ready.with(parameters);
         let made = of_set.recipe().of(&of_set.drawn_from);
         let seasons = run_set(&of_set, &*made, &plan, watch)?;
-        Ok(seasons.periods.select(Axis(1), &kept))
+        Ok([seasons.periods.select(Axis(1), &kept), seasons.years.index_axis_move(Axis(1), 0)])
     };
-    let periods = sets.parameters.iter().map(one).collect::<Result<_, _>>()?;
+    let of_sets = sets.parameters.iter().map(one).collect::<Result<Vec<_>, _>>()?;
+    let (periods, headline_years) = of_sets.into_iter().map(|[periods, years]| (periods, years)).unzip();
     let same = Slice::from(..sets.realizations as usize);
     let own = own.periods.select(Axis(1), &kept).slice_axis(Axis(2), same).to_owned();
-    Ok(SetRuns { measures: kept.iter().map(|at| all[*at].clone()).collect(), periods, own })
+    Ok(SetRuns { measures: kept.iter().map(|at| all[*at].clone()).collect(), periods, headline_years, own })
 }
 
 /// The basin's seasons with another set's snow, and weather that is corrected for catch as the set does it: `plan`'s groups are made anew.

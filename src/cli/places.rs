@@ -35,6 +35,7 @@ pub(super) fn places(
         precipitation: &precipitation_before(survey),
         cool_mean_c: cool_mean_c.as_ref(),
         winter_mean_c: &winter_mean_c,
+        low_snow_below_quantile: ready.scenario.findings.low_snow.below_quantile,
         snow_line_swe_mm: ready.scenario.findings.snow_line.swe_mm,
     };
     Ok(Places::of(&questions, findings))
@@ -55,7 +56,8 @@ pub(super) fn of_record(
         Some((year.water_year, [*year.values.first()?, *year.values.get(precipitation)?, *mean_c]))
     };
     let values: Vec<RecordValues> = years.iter().filter_map(of_year).collect();
-    RecordCoincidence::of(&values, ready.scenario.findings.periods_compared.last_years)
+    let asked = &ready.scenario.findings;
+    RecordCoincidence::of(&values, asked.low_snow.below_quantile, asked.periods_compared.last_years)
 }
 
 /// Adds it to what was found of places.

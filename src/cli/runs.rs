@@ -119,6 +119,9 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
             seed: scenario.seed,
             low_snow_below_quantile: asked.low_snow.below_quantile,
             warming_rate: asked.warming_rate,
+            redraws_years: scenario.realizations.generator.redraws_years(),
+            changes_mean: mean_change_sd_pct != 0.0,
+            levels_change_precipitation: warming.warming.changes_precipitation(&warming.levels_c),
             record: &record_years,
             bands: &ready.basin.bands,
         },
@@ -136,7 +139,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
     Ok(Findings {
         surface: Some(surface),
         by_year,
-        break_even: Some(break_even),
+        break_even: Some(break_even).filter(|found| !found.levels.is_empty()),
         parameter_spread,
         record_odds: RecordOdds::of(&refit_odds, &warming.levels_c, warming.reference),
         rule_panel,

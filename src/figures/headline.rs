@@ -4,7 +4,7 @@ use super::Setting;
 use super::labels::{
     between_levels, day_of_month, days_in_words, is_nothing, level, percent_size, sentence, size_and_unit,
 };
-use crate::findings::{Crossing, Findings, MeasureFindings};
+use crate::findings::{Crossing, Findings, Judged, MeasureFindings, judged};
 use crate::units::UnitSystem;
 
 /// The level that a headline speaks of: the first at which the shift outweighs the spread, else the warmest; where none
@@ -113,8 +113,8 @@ fn against_spread(
     subject: &str,
     units: UnitSystem,
 ) -> String {
-    match measure.outweighs {
-        Crossing::At { level_c, until_c } => {
+    match judged(measure.outweighs, measure.outweighs_range) {
+        Judged::Outweighs { level_c, until_c } => {
             let until = until_c
                 .map_or_else(|| "on".to_owned(), |until_c| format!("to {}", between_levels(units, until_c)));
             let from = between_levels(units, level_c);
@@ -125,12 +125,18 @@ fn against_spread(
                 format!("from {from} {until}, {subject} outweighs the precipitation spread")
             }
         }
-        Crossing::NotReached { up_to_c } => {
+        Judged::CannotTell { .. } => {
+            let up_to = findings.levels_c.last().map_or_else(String::new, |up_to_c| level(units, *up_to_c));
+            format!(
+                "up to {up_to} these realizations cannot tell whether {subject} outweighs the precipitation spread"
+            )
+        }
+        Judged::DoesNot { up_to_c } => {
             format!("up to {}, {subject} does not outweigh the precipitation spread", level(units, up_to_c))
         }
-        Crossing::Unknown if findings.reference + 1 == measure.levels.len() => {
+        Judged::Unknown if findings.reference + 1 == measure.levels.len() => {
             "no warmer level was run".to_owned()
         }
-        Crossing::Unknown => "there is no precipitation spread to weigh it against".to_owned(),
+        Judged::Unknown => "there is no precipitation spread to weigh it against".to_owned(),
     }
 }

@@ -91,6 +91,11 @@ pub(super) fn counted(count: usize, one: &str) -> String {
     format!("{} {one}{}", grouped(count as f64, 0), if count == 1 { "" } else { "s" })
 }
 
+/// What a shift comes of: `warming`, or that with the change of precipitation that the study states for its levels.
+pub fn cause(levels_change_precipitation: bool) -> &'static str {
+    if levels_change_precipitation { "warming with its stated change of precipitation" } else { "warming" }
+}
+
 /// `+2 °C`, `−0.9 °F`, `0 °C`: a warming level.
 pub(super) fn level(units: UnitSystem, level_c: f64) -> String {
     warming(units, level_c, 100.0)

@@ -48,7 +48,7 @@ mod check;
 mod colour_sight;
 
 pub use fits::{DrawnFit, FIT_FIGURES, FIT_SITE_FIGURES, FitFigure, FitPart, FitSiteFigure, of_fit};
-pub use labels::sentence;
+pub use labels::{cause, sentence};
 pub use rule_panel::rule_in_words;
 pub use text_width::text_width;
 

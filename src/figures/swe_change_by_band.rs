@@ -84,13 +84,14 @@ fn title(findings: &Findings, places: &Places, at: usize, units: UnitSystem) -> 
     let (lose, gain, all) = (count(Sign::Loses), count(Sign::Gains), changes.len());
     let level = name(findings, at, units);
     let of_bands = |count: usize| format!("{count} of {all} elevation bands");
+    let gains = if gain == 1 { "gains" } else { "gain" };
     Some(match (lose, gain) {
         (0, 0) => format!("At {level}, no elevation band can be told to lose or gain snow water"),
         (lose, 0) if lose == all => format!("At {level}, every elevation band loses snow water"),
         (0, gain) if gain == all => format!("At {level}, every elevation band gains snow water"),
         (lose, 0) => format!("At {level}, {} lose snow water and none gains", of_bands(lose)),
         (0, gain) => format!("At {level}, {} gain snow water and none loses", of_bands(gain)),
-        (lose, gain) => format!("At {level}, {} lose snow water and {gain} gain", of_bands(lose)),
+        (lose, gain) => format!("At {level}, {} lose snow water and {gain} {gains}", of_bands(lose)),
     })
 }
 

@@ -1,6 +1,6 @@
 //! How much of what differs is the warming, in means over more and more years.
 
-use super::labels::{grouped, level};
+use super::labels::{cause, grouped, level};
 use super::page::Paragraphs;
 use super::sheet::{Drawn, HPos, Sheet, Stroke, VPos};
 use super::shown::Shown;
@@ -28,7 +28,9 @@ const PERIOD_PX: f64 = 104.0;
 const SHARE_PX: f64 = 110.0;
 
 fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
-    let measure = findings.by_year.as_ref()?.measures.first()?;
+    let by_year = findings.by_year.as_ref()?;
+    let measure = by_year.measures.first()?;
+    let cause = cause(by_year.levels_change_precipitation);
     let shown = Shown::of(findings);
     let partitions: Vec<(usize, &Partition)> = shown
         .others
@@ -39,20 +41,23 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
         })
         .collect();
     let (_, farthest) = partitions.last()?;
-    let title = title(&measure.measure.title, farthest, setting.units);
+    let title = title(&measure.measure.title, farthest, cause, setting.units);
     let which = shown.in_words(findings, setting.units);
     let said = Said {
         ensemble: format!("{}, the reference and one level at a time.{which}", ensemble(findings)),
-        key: "Bars, from the left: the warming (in the level's colour, its share at the right, with a line over its 5–95 % range); how \
+        key: format!(
+            "Bars, from the left: the {cause} (in the level's colour, its share at the right, with a line over its 5–95 % range); how \
               differently realizations and years take it (light grey); the realization (dark grey); the year within it (pale). \
               Where a realization holds a single period the two cannot be told apart, and stand as one."
-            .to_owned(),
+        ),
+        cause,
     };
     let text = paint(findings, &partitions, setting, &title, &said).ok()?;
     let caption = format!(
         "{} Shares of the variance of the {} at the reference and at each warming level, of single years and of means over more of \
          them, by {}.{which} The 5–95 % ranges are over resampled realizations: chance of the simulation, not day-to-day variation. \
-         A share depends on the two levels that are held against each other.",
+         The {cause} is largest where it holds more than chance as a whole (realization and year together) and more than how differently \
+         they take it. A share depends on the two levels that are held against each other.",
         FIGURE.question,
         measure.measure.title,
         ensemble(findings)
@@ -64,9 +69,10 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
 struct Said {
     ensemble: String,
     key: String,
+    cause: &'static str,
 }
 
-fn title(measure: &str, partition: &Partition, units: UnitSystem) -> String {
+fn title(measure: &str, partition: &Partition, cause: &str, units: UnitSystem) -> String {
     let place = level(units, partition.level_c);
     let longest = partition.periods.last().map_or(1, |period| period.years);
     let when = match partition.warming_holds_most {
@@ -75,11 +81,11 @@ fn title(measure: &str, partition: &Partition, units: UnitSystem) -> String {
         HoldsMost::Never => format!("in no averaging period up to {longest} years"),
         HoldsMost::CannotTell => {
             return format!(
-                "{measure}: whether {place} holds the largest share of the variance cannot be told"
+                "{measure}: whether {place} of {cause} holds the largest share of the variance cannot be told"
             );
         }
     };
-    format!("{measure}: {place} of warming holds the largest share of the variance {when}")
+    format!("{measure}: {place} of {cause} holds the largest share of the variance {when}")
 }
 
 fn period_name(years: usize) -> String {
@@ -103,7 +109,7 @@ fn paint(
     heading.write(&sheet, MARGIN_PX)?;
     sheet.group("axis", || {
         sheet.write("Share of the variance", (edges[0], top - 10.0), NAME, HPos::Left, VPos::Bottom)?;
-        sheet.write("Warming", (edges[1] + 12.0, top - 10.0), NAME, HPos::Left, VPos::Bottom)
+        sheet.write("Level's share", (edges[1] + 12.0, top - 10.0), NAME, HPos::Left, VPos::Bottom)
     })?;
     let mut y = top;
     for (at, partition) in partitions {
@@ -123,7 +129,12 @@ fn paint(
         .flat_map(|(_, partition)| {
             let place = level(setting.units, partition.level_c);
             partition.periods.iter().map(move |period| {
-                format!("{place}, {}: {} % warming", period_name(period.years), percent(period.level.value))
+                format!(
+                    "{place}, {}: {} % {}",
+                    period_name(period.years),
+                    percent(period.level.value),
+                    said.cause
+                )
             })
         })
         .collect();

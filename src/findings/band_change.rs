@@ -143,7 +143,8 @@ impl Sign {
         }
     }
 
-    fn of(range: Range) -> Self {
+    /// That of the 5-95 % range of a band's paired changes.
+    pub fn of(range: Range) -> Self {
         if range.q95 < 0.0 {
             Self::Loses
         } else if range.q05 > 0.0 {

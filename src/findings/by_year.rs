@@ -28,6 +28,12 @@ pub struct ByYearQuestions<'a> {
     pub low_snow_below_quantile: f64,
     /// The user's rate of warming, if one is stated.
     pub warming_rate: Option<WarmingRate>,
+    /// Whether realizations are the record's own years in another order.
+    pub redraws_years: bool,
+    /// Whether the mean precipitation of realizations changes at random.
+    pub changes_mean: bool,
+    /// Whether the levels, or some of them, come with a stated change of precipitation.
+    pub levels_change_precipitation: bool,
     /// The record's own years, run at every level; may be empty.
     pub record: &'a [RecordYear],
     /// The bands, from the lowest.
@@ -41,6 +47,13 @@ pub struct ByYear {
     pub method: &'static str,
     /// Single years of a level, over all realizations.
     pub simulated_years: usize,
+    /// Whether realizations are the record's own years in another order: how often its lowest come back at the reference then
+    /// rests on these very years.
+    pub redraws_years: bool,
+    /// Whether the mean precipitation of realizations changes at random, and theirs with it.
+    pub changes_mean: bool,
+    /// Whether what a level does is that of warming with a stated change of precipitation.
+    pub levels_change_precipitation: bool,
     /// Of the headline measure, and of the first volume.
     pub measures: Vec<MeasureByYear>,
     /// Low-snow odds of the headline measure; none where few of the reference's years have snow.
@@ -100,6 +113,9 @@ impl ByYear {
         Some(Self {
             method: RANGE_METHOD,
             simulated_years: realizations * length,
+            redraws_years: asked.redraws_years,
+            changes_mean: asked.changes_mean,
+            levels_change_precipitation: asked.levels_change_precipitation,
             measures: told
                 .filter_map(|(at, measure)| MeasureByYear::of(measure, &years(at), asked, &resamples))
                 .collect(),

@@ -3,9 +3,7 @@
 use super::cells::Cells;
 use super::chance::Chance;
 use super::counts::{Counts, share};
-use super::low_snow::LOW_SNOW_BELOW_QUANTILE;
-use super::places::YearValues;
-use super::quantile::{quantile, sorted};
+use super::reference_years::{Limits, YearValues};
 use super::resample::{Estimate, Resamples};
 use serde::Serialize;
 
@@ -89,25 +87,18 @@ pub struct LowSnowGivenDry {
 impl Coincidence {
     pub(super) fn of(
         values: &YearValues<'_>,
+        low_snow_below_quantile: f64,
         levels_c: &[f64],
         reference: usize,
         resamples: &Resamples,
     ) -> Option<Self> {
-        let at = values.at(reference);
-        let [median_precipitation_mm, median_temperature_c] = at.medians();
-        let swe = sorted(at.years().map(|[swe_mm, ..]| swe_mm));
-        let low_snow_below_mm = quantile(&swe, LOW_SNOW_BELOW_QUANTILE);
-        let all = [median_precipitation_mm, median_temperature_c, low_snow_below_mm];
-        if all.iter().any(|value| !value.is_finite()) {
-            return None;
-        }
+        let limits = Limits::of(&values.at(reference), low_snow_below_quantile)?;
         let levels = levels_c.iter().enumerate().map(|(level, level_c)| {
             let at = values.at(level);
             // The four cells without low snow, and the same four with it.
             let counts = at.counted::<8>(|[swe_mm, precipitation_mm, mean_c]| {
-                let cell =
-                    Cells::place(precipitation_mm <= median_precipitation_mm, mean_c <= median_temperature_c);
-                Some(cell + 4 * usize::from(swe_mm < low_snow_below_mm))
+                let cell = Cells::place(precipitation_mm <= limits.precipitation_mm, mean_c <= limits.mean_c);
+                Some(cell + 4 * usize::from(swe_mm < limits.low_snow_mm))
             });
             let mut level = level_of(
                 *level_c,
@@ -115,17 +106,16 @@ impl Coincidence {
                 own_medians(&at.counted(about(at.medians())), resamples),
                 resamples,
             );
-            // Of years that are mostly bare no share is low.
-            if low_snow_below_mm <= 0.0 {
+            if !limits.has_snow() {
                 level.low_snow_given_dry = LowSnowGivenDry { warm: None, cool: None, ratio: None };
             }
             level
         });
         Some(Self {
-            median_precipitation_mm,
-            median_temperature_c,
-            low_snow_below_mm,
-            low_snow_below_quantile: LOW_SNOW_BELOW_QUANTILE,
+            median_precipitation_mm: limits.precipitation_mm,
+            median_temperature_c: limits.mean_c,
+            low_snow_below_mm: limits.low_snow_mm,
+            low_snow_below_quantile,
             levels: levels.collect(),
         })
     }
@@ -186,12 +176,14 @@ impl Depends {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::perturb::stream;
     use ndarray::Array3;
+    use rand_distr::{Distribution, StandardNormal};
 
     /// By hand, eight years: precipitation 1 to 8, so that 1 to 4 are dry; temperature is such that years 1 and 2 are warm, 3 and 4
     /// cool; SWE is lowest in year 1 alone (type 8's 20 % of 8 values lies at 2.0: between the second value and the third by 0.0).
     /// With two degrees more all years are warm. Low snow given dry and warm: 1 of 2, given dry and cool 0 of 2: no ratio.
-    fn found() -> Coincidence {
+    fn found(low_snow_below_quantile: f64) -> Coincidence {
         let one = |values: [f64; 8], warming: f64| {
             Array3::from_shape_fn((2, 2, 8), |(level, _, year)| values[year] + warming * level as f64)
         };
@@ -200,12 +192,13 @@ mod tests {
         let swe = one([10.0, 20.0, 30.0, 40.0, 50.0, 60.0, 70.0, 80.0], 0.0);
         let values =
             YearValues { swe_mm: swe.view(), precipitation_mm: precipitation.view(), mean_c: mean_c.view() };
-        Coincidence::of(&values, &[0.0, 2.0], 0, &Resamples::new(1, 2)).expect("values in every year")
+        Coincidence::of(&values, low_snow_below_quantile, &[0.0, 2.0], 0, &Resamples::new(1, 2))
+            .expect("values in every year")
     }
 
     #[test]
     fn a_table_counted_by_hand() {
-        let found = found();
+        let found = found(0.2);
         let cells = |dry_warm, dry_cool, wet_warm, wet_cool| Cells { dry_warm, dry_cool, wet_warm, wet_cool };
         assert_eq!(found.levels[0].years, cells(4, 4, 4, 4));
         assert_eq!(found.levels[1].years, cells(8, 0, 8, 0));
@@ -224,6 +217,20 @@ mod tests {
         assert_eq!((chance(warmed.warm), chance(warmed.cool)), (Some(0.25), None), "an empty cell is none");
     }
 
+    /// By hand, of the same years twice: type 8's 40 % of 16 values lies at 16*0.4 + 1.4/3 = rank 6.867, between the third year's SWE,
+    /// 30 mm, twice, and the fourth's: at 30 + 0.867*(40 - 30) = 38.667 mm with ranks 6 and 7. Years 1 to 3 are low: of the dry and warm
+    /// both, of the dry and cool one of two, twice as often.
+    #[test]
+    fn low_snow_is_what_the_user_says() {
+        let found = found(0.4);
+        assert_eq!(found.low_snow_below_quantile, 0.4);
+        assert!((found.low_snow_below_mm - (30.0 + 10.0 * (6.4 + 1.4 / 3.0 - 6.0))).abs() < 1e-9);
+        let given = found.levels[0].low_snow_given_dry;
+        let chance = |chance: Option<Chance>| chance.map(|chance| chance.estimate.value);
+        assert_eq!((chance(given.warm), chance(given.cool)), (Some(1.0), Some(0.5)));
+        assert_eq!(given.ratio.expect("low years of both").value, 2.0);
+    }
+
     /// Two errors are 0.2: 1.21 and 0.79 lie apart from 1, 1.19 and 0.81 do not; without an error nobody can tell.
     #[test]
     fn within_two_errors_nobody_can_tell() {
@@ -234,5 +241,31 @@ mod tests {
         assert_eq!(of(0.81, Some(0.1)), Depends::CannotTell);
         assert_eq!(of(2.0, None), Depends::CannotTell);
         assert_eq!(Depends::of(None), Depends::CannotTell);
+    }
+
+    /// Halves that know nothing of each other coincide in a quarter of years: of 2000 the share's standard deviation about medians is
+    /// 0.25/sqrt(2000) = 0.0056 (hypergeometric), the factor's four times that; four of them are allowed.
+    #[test]
+    fn independent_halves_coincide_in_a_quarter_of_years() {
+        let mut random = stream(6000, 0);
+        let mut normal = |_: (usize, usize, usize)| -> f64 { StandardNormal.sample(&mut random) };
+        let [mm, mean_c] = [(); 2].map(|()| Array3::from_shape_fn((1, 100, 20), &mut normal));
+        let values = YearValues { swe_mm: mm.view(), precipitation_mm: mm.view(), mean_c: mean_c.view() };
+        let found =
+            Coincidence::of(&values, 0.2, &[0.0], 0, &Resamples::new(1, 100)).expect("values in every year");
+        let level = &found.levels[0];
+        assert!((level.dry_warm.expect("years").estimate.value - 0.25).abs() < 4.0 * 0.0056);
+        assert!((level.dependence.expect("dry years").value - 1.0).abs() < 16.0 * 0.0056);
+    }
+
+    /// Chances of 54 and 25 % make a ratio of 2.16.
+    #[test]
+    fn a_ratio_of_chances() {
+        let counts = Counts(vec![[46, 75, 100, 100, 54, 25, 0, 0]]);
+        let own = own_medians(&Counts(vec![[1; 4]]), &Resamples::new(1, 1));
+        let given = level_of(0.0, &counts, own, &Resamples::new(1, 1)).low_snow_given_dry;
+        let ratio = given.ratio.expect("low years of both");
+        assert!((ratio.value - 2.16).abs() < 1e-12, "{ratio:?}");
+        assert_eq!(ratio.monte_carlo_error, None, "of a single realization");
     }
 }

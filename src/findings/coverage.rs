@@ -133,7 +133,7 @@ fn the_break_even_precipitation_lies_in_its_range_and_its_node_within_the_error(
         let (reference, questions) = (realizations(study, count), questions(study));
         let changes = questions.changes();
         let value = |at: usize, of: &Change| {
-            let share = if at % 2 == 0 { 0.10 } else { 0.20 };
+            let share = if at.is_multiple_of(2) { 0.10 } else { 0.20 };
             reference[at] * (1.0 - share * of.warming_c) * (1.0 + of.precipitation_change_pct / 100.0)
         };
         let runs = NodeRuns {

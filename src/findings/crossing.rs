@@ -66,6 +66,60 @@ pub struct CrossingRange {
     pub q95_c: Option<f64>,
 }
 
+/// What a crossing and its Monte Carlo range say together.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub enum Judged {
+    /// From here on, in these realizations and in others of the same kind.
+    Outweighs {
+        /// The warming, degC.
+        level_c: f64,
+        /// Where it falls back, if it does, degC.
+        until_c: Option<f64>,
+    },
+    /// At no level, in these realizations and in others.
+    DoesNot {
+        /// The highest level, degC.
+        up_to_c: f64,
+    },
+    /// These realizations say one thing, and others of the same kind may say the other.
+    CannotTell {
+        /// Where these cross; none where they do not.
+        crosses_at_c: Option<f64>,
+        /// Where others may cross first; none where too few realizations leave that unknown.
+        may_cross_at_c: Option<f64>,
+    },
+    /// There is no warmer level, or no ratio at one.
+    Unknown,
+}
+
+/// Judges a crossing by its range: told only where the 5 and the 95 % end say the same.
+///
+/// ```
+/// use thawline::findings::{judged, Crossing, CrossingRange, Judged};
+/// let at = Crossing::At { level_c: 3.8, until_c: None };
+/// let both = CrossingRange { q05_c: Some(3.5), q95_c: Some(3.9) };
+/// assert_eq!(judged(at, Some(both)), Judged::Outweighs { level_c: 3.8, until_c: None });
+/// let open = CrossingRange { q95_c: None, ..both };
+/// let cannot = Judged::CannotTell { crosses_at_c: Some(3.8), may_cross_at_c: Some(3.5) };
+/// assert_eq!(judged(at, Some(open)), cannot);
+/// ```
+pub fn judged(crossing: Crossing, range: Option<CrossingRange>) -> Judged {
+    let may_cross_at_c = range.and_then(|range| range.q05_c);
+    match (crossing, range) {
+        (Crossing::Unknown, _) => Judged::Unknown,
+        (Crossing::At { level_c, until_c }, Some(CrossingRange { q95_c: Some(_), .. })) => {
+            Judged::Outweighs { level_c, until_c }
+        }
+        (Crossing::NotReached { up_to_c }, Some(CrossingRange { q05_c: None, .. })) => {
+            Judged::DoesNot { up_to_c }
+        }
+        (Crossing::At { level_c, .. }, _) => {
+            Judged::CannotTell { crosses_at_c: Some(level_c), may_cross_at_c }
+        }
+        (Crossing::NotReached { .. }, _) => Judged::CannotTell { crosses_at_c: None, may_cross_at_c },
+    }
+}
+
 /// The range of the crossing. `ratios` holds, for each level above the reference in ascending order, the ratio of every
 /// resample. Nothing where a resample has no ratio at a level that it needs.
 pub(super) fn crossing_range(reference_c: f64, ratios: &[(f64, Vec<Option<f64>>)]) -> Option<CrossingRange> {
@@ -97,6 +151,20 @@ pub(super) fn range_of(crossings: impl Iterator<Item = Crossing>) -> Option<Cros
 #[cfg(test)]
 mod tests {
     use super::*;
+
+    /// By hand: told where both ends say the same; never of a crossing without a range.
+    #[test]
+    fn a_crossing_is_judged_by_both_ends_of_its_range() {
+        let range = |q05_c, q95_c| Some(CrossingRange { q05_c, q95_c });
+        let never = Crossing::NotReached { up_to_c: 4.0 };
+        assert_eq!(judged(never, range(None, None)), Judged::DoesNot { up_to_c: 4.0 });
+        let may = Judged::CannotTell { crosses_at_c: None, may_cross_at_c: Some(3.9) };
+        assert_eq!(judged(never, range(Some(3.9), None)), may);
+        let few = |crosses_at_c| Judged::CannotTell { crosses_at_c, may_cross_at_c: None };
+        assert_eq!(judged(never, None), few(None));
+        assert_eq!(judged(Crossing::At { level_c: 2.0, until_c: None }, None), few(Some(2.0)));
+        assert_eq!(judged(Crossing::Unknown, range(None, None)), Judged::Unknown);
+    }
 
     /// A reference that does not spread gives no ratio in any resample: that is no range that lies above every level.
     #[test]

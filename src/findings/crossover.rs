@@ -2,8 +2,8 @@
 //! section 10).
 
 use super::elevations::{Line, LineRange, Row};
-use super::places::YearValues;
 use super::quantile::{quantile, sorted};
+use super::reference_years::YearValues;
 use super::resample::Resamples;
 use ndarray::{Array2, ArrayView3};
 use serde::Serialize;
@@ -63,8 +63,9 @@ pub enum Dominates {
 /// The crossover over resampled realizations.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct CrossoverRange {
-    /// 5-95 % of the elevation; temperature everywhere counts as above all bands, precipitation everywhere as below.
-    pub elevation: LineRange,
+    /// 5-95 % of the elevation; where one of the two decides everywhere it counts as outside the bands, on the side to which that
+    /// moves it. Resamples that are the other way about are left out, and none is left of them alone.
+    pub elevation: Option<LineRange>,
     /// Share of the resamples with temperature below and precipitation above an elevation.
     pub share_found: f64,
     /// Share of the resamples that say the same as all realizations together, whatever the elevation.
@@ -190,11 +191,16 @@ impl Dominates {
 impl CrossoverRange {
     /// Nothing where a resample says nothing, or there are none.
     fn of(found: Dominates, resampled: &[Dominates]) -> Option<Self> {
-        let line = |one: &Dominates| match one {
-            Dominates::Crossover { elevation_m } => Some(Line::At { elevation_m: *elevation_m }),
-            Dominates::Temperature => Some(Line::AboveHighestBand),
-            Dominates::Precipitation => Some(Line::BelowLowestBand),
-            Dominates::Reversed { .. } | Dominates::Unknown => None,
+        let is_reversed = matches!(found, Dominates::Reversed { .. });
+        let line = |one: &Dominates| match (*one, is_reversed) {
+            (Dominates::Crossover { elevation_m }, false) | (Dominates::Reversed { elevation_m }, true) => {
+                Some(Line::At { elevation_m })
+            }
+            (Dominates::Temperature, false) | (Dominates::Precipitation, true) => {
+                Some(Line::AboveHighestBand)
+            }
+            (Dominates::Precipitation, false) | (Dominates::Temperature, true) => Some(Line::BelowLowestBand),
+            _ => None,
         };
         if resampled.is_empty() || resampled.iter().any(|one| one.is_like(Dominates::Unknown)) {
             return None;
@@ -214,7 +220,9 @@ impl CrossoverRange {
 mod tests {
     use super::super::places::tests::bands_at;
     use super::*;
+    use crate::perturb::stream;
     use ndarray::Array3;
+    use rand_distr::{Distribution, StandardNormal};
 
     /// By construction: temperature and precipitation are uncorrelated, both with a variance of 1, and SWE = 100 + 3*(b*P - a*T), so
     /// that |r(SWE,P)| = b/sqrt(a*a + b*b), |r(SWE,T)| = a/sqrt(a*a + b*b). With a/b of 4/3, 3/4 at 1000 and 2000 m the two are 0.6
@@ -242,7 +250,8 @@ mod tests {
         assert!((elevation_m - 1500.0).abs() < 1e-9, "{elevation_m}");
         let range = found.range.expect("resamples");
         assert_eq!((range.share_found, range.share_alike), (1.0, 1.0), "realizations that are alike");
-        let [low, high] = [range.elevation.q05_m, range.elevation.q95_m].map(|end| end.expect("an end"));
+        let range = range.elevation.expect("crossovers");
+        let [low, high] = [range.q05_m, range.q95_m].map(|end| end.expect("an end"));
         assert!((low - 1500.0).abs() < 1e-6 && (high - 1500.0).abs() < 1e-6);
     }
 
@@ -253,13 +262,42 @@ mod tests {
         assert_eq!(at(&[]).found, Dominates::Unknown);
         assert_eq!(at(&[[0.0, 0.0]]).found, Dominates::Unknown, "snow that does not vary");
         assert_eq!(at(&[[0.0, 0.0], [4.0, 3.0]]).found, Dominates::Temperature, "bare bands decide nothing");
-        let Dominates::Reversed { elevation_m } = at(&[[3.0, 4.0], [4.0, 3.0]]).found else {
-            panic!("not reversed")
-        };
+        let reversed = at(&[[3.0, 4.0], [4.0, 3.0]]);
+        let Dominates::Reversed { elevation_m } = reversed.found else { panic!("not reversed") };
+        let range = reversed.range.and_then(|range| range.elevation).expect("resamples that are alike");
+        assert!((range.q05_m.expect("an end") - 1500.0).abs() < 1e-6, "{range:?}");
         assert!((elevation_m - 1500.0).abs() < 1e-9);
         let lowest = at(&[[4.0, 3.0], [3.0, 4.0], [4.0, 3.0]]).found;
         assert!(
             matches!(lowest, Dominates::Crossover { elevation_m } if (elevation_m - 1500.0).abs() < 1e-9)
         );
+    }
+
+    /// The same construction of normal years with noise of 2*3 mm in every band of its own: both correlations shrink alike, so that the
+    /// truth stays 1500 m by symmetry. Of 200 studies a 5-95 % range is to hold it in 180; the binomial standard error is 2.1 %, and the
+    /// percentile bootstrap of 30 realizations falls one or two percent short, so 82 to 97 %.
+    #[test]
+    fn ranges_hold_the_true_elevation_nine_times_in_ten() {
+        let rows = Row::all(&bands_at(&[1000.0, 2000.0]));
+        let rows: Vec<&Row> = rows.iter().collect();
+        let holds = (0..200).filter(|study| {
+            let mut random = stream(4000 + study, 0);
+            let mut normal = |_: (usize, usize)| -> f64 { StandardNormal.sample(&mut random) };
+            let [mean_c, mm] = [(); 2].map(|()| Array2::from_shape_fn((30, 6), &mut normal));
+            let noise = [(); 2].map(|()| Array2::from_shape_fn((30, 6), &mut normal));
+            let swe_mm = Array3::from_shape_fn((2, 30, 6), |(band, realization, year)| {
+                let at = [realization, year];
+                let [a, b] = [[4.0, 3.0], [3.0, 4.0]][band];
+                100.0 + 3.0 * (b * mm[at] - a * mean_c[at] + 2.0 * noise[band][at])
+            });
+            let resamples = Resamples::new(*study, 30);
+            let found = Crossover::at(0.0, &rows, &swe_mm.view(), [&mean_c, &mm], &resamples);
+            let range = found.range.and_then(|range| range.elevation).expect("a range");
+            // An end outside the bands lies beyond the truth on its side.
+            range.q05_m.map_or(range.reaches_below_lowest_band, |low_m| low_m <= 1500.0)
+                && range.q95_m.map_or(range.reaches_above_highest_band, |high_m| high_m >= 1500.0)
+        });
+        let share = holds.count() as f64 / 200.0;
+        assert!((0.82..=0.97).contains(&share), "{share}");
     }
 }

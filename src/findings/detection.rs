@@ -239,4 +239,32 @@ mod tests {
         assert_eq!(found.periods[0].leaves_spread, Crossing::NotReached { up_to_c: 1.0 });
         assert_eq!(found.periods.len(), 2, "no realization of 20 years holds 30");
     }
+
+    /// SN-10: emergence is where signal over noise passes 1 (after Hawkins & Sutton 2012, from memory). Years that vary by 10 about a
+    /// mean that falls by 2 a degree emerge at 5 degC; means over 10 and 30 years, whose noise is sqrt(10) and sqrt(30) smaller,
+    /// at 1.581 and 0.913 degC, and at 0.2 degC a decade from 2000 on in 2250, 2079 and 2046. Of 24 000, 2400 and 800 means the
+    /// noise is known to 0.5, 1.4 and 2.5 %: three times that.
+    #[test]
+    fn longer_means_emerge_at_smaller_warming() {
+        use rand_distr::{Distribution, StandardNormal};
+        let mut random = crate::perturb::stream(29, 0);
+        let reference = ndarray::Array2::from_shape_simple_fn((800, 30), || {
+            let drawn: f64 = StandardNormal.sample(&mut random);
+            300.0 + 10.0 * drawn
+        });
+        let levels_c = [0.0, 1.0, 2.0, 4.0, 6.0];
+        let years = levels_c.map(|level_c| &reference - 2.0 * level_c);
+        let views: Vec<_> = years.iter().map(|of| of.view()).collect();
+        let rate = Some(WarmingRate { c_per_decade: 0.2, from_year: 2000.0 });
+        let few = Resamples::new(1, 800).few();
+        let found = Detection::of(&views, &levels_c, 0, rate, &few).unwrap();
+        let expected = [(5.0, 0.015), (1.581, 0.042), (0.913, 0.075)];
+        for (period, (expected_c, share)) in found.periods.iter().zip(expected) {
+            let at_c = at(period.leaves_spread).unwrap();
+            assert!((at_c / expected_c - 1.0).abs() < share, "{at_c} in {} years", period.years);
+            let year = period.calendar_year.unwrap().value;
+            assert!((year - (2000.0 + 50.0 * expected_c)).abs() < 50.0 * expected_c * share, "{year}");
+        }
+        assert_eq!(found.periods.len(), 3);
+    }
 }

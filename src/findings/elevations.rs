@@ -79,24 +79,37 @@ impl Line {
     }
 }
 
-/// The 5-95 % range of a line; none where an end lies outside the bands.
+/// The 5-95 % range of a line.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct LineRange {
-    /// 5 % quantile, m.
+    /// 5 % quantile, m; none where it lies outside the bands.
     pub q05_m: Option<f64>,
-    /// 95 % quantile, m.
+    /// 95 % quantile, m; none where it lies outside the bands.
     pub q95_m: Option<f64>,
+    /// Whether the 5 % quantile lies at the lowest band or below it.
+    pub reaches_below_lowest_band: bool,
+    /// Whether the 95 % quantile lies above the highest band.
+    pub reaches_above_highest_band: bool,
 }
 
 impl LineRange {
-    pub(super) fn of(lines: impl Iterator<Item = Line>) -> Self {
-        let lines = sorted(lines.map(|line| match line {
+    /// Nothing of no lines.
+    pub(super) fn of(lines: impl IntoIterator<Item = Line>) -> Option<Self> {
+        let lines = sorted(lines.into_iter().map(|line| match line {
             Line::At { elevation_m } => elevation_m,
             Line::BelowLowestBand => f64::NEG_INFINITY,
             Line::AboveHighestBand => f64::INFINITY,
         }));
-        let end = |p| Some(quantile(&lines, p)).filter(|elevation_m| elevation_m.is_finite());
-        Self { q05_m: end(0.05), q95_m: end(0.95) }
+        if lines.is_empty() {
+            return None;
+        }
+        let [low_m, high_m] = [0.05, 0.95].map(|share| quantile(&lines, share));
+        Some(Self {
+            q05_m: Some(low_m).filter(|end_m| end_m.is_finite()),
+            q95_m: Some(high_m).filter(|end_m| end_m.is_finite()),
+            reaches_below_lowest_band: low_m == f64::NEG_INFINITY,
+            reaches_above_highest_band: high_m == f64::INFINITY,
+        })
     }
 }
 
@@ -112,5 +125,19 @@ mod tests {
         assert_eq!(of(&[(1000.0, 100.0), (1400.0, 160.0)]), Line::BelowLowestBand);
         assert_eq!(of(&[(1000.0, 10.0), (1400.0, 99.0)]), Line::AboveHighestBand);
         assert_eq!(of(&[]), Line::AboveHighestBand);
+    }
+
+    /// By hand: of ten lines type 8 holds both quantiles at the ends (positions 0.85 and 10.15).
+    #[test]
+    fn ranges_say_on_which_side_they_leave_the_bands() {
+        let inside: Vec<Line> = (0..9).map(|at| Line::At { elevation_m: 1000.0 + f64::from(at) }).collect();
+        let with = |line| LineRange::of(inside.iter().copied().chain([line])).expect("ten lines");
+        let low = with(Line::BelowLowestBand);
+        assert_eq!((low.q05_m, low.q95_m), (None, Some(1008.0)));
+        assert_eq!((low.reaches_below_lowest_band, low.reaches_above_highest_band), (true, false));
+        let high = with(Line::AboveHighestBand);
+        assert_eq!((high.q05_m, high.q95_m), (Some(1000.0), None));
+        assert_eq!((high.reaches_below_lowest_band, high.reaches_above_highest_band), (false, true));
+        assert_eq!(LineRange::of([]), None);
     }
 }

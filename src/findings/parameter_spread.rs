@@ -8,7 +8,7 @@ use super::measure::MeasureFindings;
 use super::quantile::{quantile, sorted};
 use super::shift::percent_change;
 use super::spread::{Spread, over_half};
-use super::three_way::{ThreeWay, ThreeWayShares};
+use super::three_way::{AveragedShares, ThreeWay, ThreeWayShares, averaged_shares};
 use super::yardstick::Levels;
 use crate::season::Measure;
 use ndarray::{Array3, ArrayView2, Axis};
@@ -21,7 +21,9 @@ pub struct SetRuns {
     pub measures: Vec<Measure>,
     /// A set each: period values of the basin, `[level][measure][realization]`, the same realizations in all.
     pub periods: Vec<Array3<f64>>,
-    /// The same of the study's own parameters.
+    /// A set each: single years of the first of the measures, `[level][realization][year]`.
+    pub headline_years: Vec<Array3<f64>>,
+    /// Period values of the study's own parameters.
     pub own: Array3<f64>,
 }
 
@@ -59,7 +61,7 @@ pub struct OverSets {
 }
 
 /// The sets' answers at one level, and what they weigh.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+#[derive(Debug, Clone, PartialEq, Serialize)]
 pub struct LevelBySet {
     /// The level, degC.
     pub level_c: f64,
@@ -71,6 +73,9 @@ pub struct LevelBySet {
     pub weighed: Option<Weighed>,
     /// Shares of the period values' sums of squares over reference and level, all realizations and sets.
     pub variance_shares: Option<ThreeWayShares>,
+    /// The same of means over so many years; of the headline alone.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub averaged_shares: Vec<AveragedShares>,
 }
 
 /// What moves a measure: warming, precipitation's chance, the choice of parameters.
@@ -111,7 +116,8 @@ impl ParameterSpread {
                 let at = runs.measures.iter().position(|measure| *measure == own.measure)?;
                 let of_sets: Vec<_> =
                     runs.periods.iter().map(|periods| periods.index_axis(Axis(1), at)).collect();
-                MeasureBySet::of(own, &runs.own.index_axis(Axis(1), at), &of_sets, levels)
+                let years: &[Array3<f64>] = if at == 0 { &runs.headline_years } else { &[] };
+                MeasureBySet::of(own, &runs.own.index_axis(Axis(1), at), (&of_sets, years), levels)
             })
             .collect();
         let realizations = runs.periods.first()?.len_of(Axis(2));
@@ -120,11 +126,11 @@ impl ParameterSpread {
 }
 
 impl MeasureBySet {
-    /// `of_own` and `of_sets` are period values `[level][realization]`, a set each.
+    /// `of_own` and `of_sets` are period values `[level][realization]`, a set each; `years` single years, where they are kept.
     fn of(
         own: &MeasureFindings,
         of_own: &ArrayView2<'_, f64>,
-        of_sets: &[ArrayView2<'_, f64>],
+        (of_sets, years): (&[ArrayView2<'_, f64>], &[Array3<f64>]),
         levels: Levels<'_>,
     ) -> Option<Self> {
         let median =
@@ -148,6 +154,7 @@ impl MeasureBySet {
                     .zip(own.precipitation_spread)
                     .map(|(shift, spread)| Weighed::of(shift, spread, own_reference, reference)),
                 variance_shares: variance_shares(of_sets, levels.reference, at),
+                averaged_shares: averaged_shares(years, [levels.reference, at]),
             })
         };
         let others = levels.levels_c.iter().enumerate().filter(|(at, _)| *at != levels.reference);

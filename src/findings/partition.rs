@@ -1,7 +1,9 @@
 //! Partition of variance by averaging period: how much of what differs is the warming, and how much is chance.
 //!
 //! Two levels at a time, since the share of the level depends on the levels chosen. In single years the weather rules; means
-//! over more years have less of it, and from some averaging period on the warming may hold the largest share.
+//! over more years have less of it, and from some averaging period on the warming may hold the largest share: held against
+//! chance as a whole and against how differently chance takes the warming. A realization that holds one period cannot tell its
+//! own chance from the period's, so that smaller parts would be another yardstick at long means than at short ones.
 
 use super::ranged::Ranged;
 use super::resample::Resamples;
@@ -22,7 +24,7 @@ pub struct Partition {
     pub level_c: f64,
     /// One entry an averaging period that the realizations hold, ascending.
     pub periods: Vec<PartitionedPeriod>,
-    /// From which averaging period on the warming holds the largest share.
+    /// From which averaging period on the warming holds the largest share of three: its own, chance's and the interaction's.
     pub warming_holds_most: HoldsMost,
 }
 
@@ -45,11 +47,15 @@ pub struct PartitionedPeriod {
     pub year: Option<Ranged>,
     /// Of how differently periods take the warming; none where a realization holds a single one.
     pub level_by_year: Option<Ranged>,
-    /// The warming's share less the largest other.
+    /// Of chance as a whole: realization and year together.
+    pub chance: Ranged,
+    /// Of how differently chance takes the warming: level by realization and level by year together.
+    pub interaction: Ranged,
+    /// The warming's share less the larger of `chance` and `interaction`, the same two however many periods a realization holds.
     pub level_less_largest_other: Ranged,
 }
 
-/// From which averaging period on the warming holds the largest share.
+/// From which averaging period on the warming holds the largest share, against chance as a whole and the interaction.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
 #[serde(rename_all = "snake_case", tag = "warming_holds_most")]
 pub enum HoldsMost {
@@ -133,11 +139,21 @@ impl PartitionedPeriod {
             level_by_realization: of(|shares| shares[2]),
             year: is_apart.then(|| of(|shares| shares[3])),
             level_by_year: is_apart.then(|| of(|shares| shares[4])),
-            level_less_largest_other: of(|shares| {
-                shares[0] - shares[1..].iter().copied().fold(0.0, f64::max)
-            }),
+            chance: of(chance),
+            interaction: of(interaction),
+            level_less_largest_other: of(|shares| shares[0] - chance(shares).max(interaction(shares))),
         })
     }
+}
+
+/// Realization and year within it.
+fn chance(shares: &[f64; PARTS]) -> f64 {
+    shares[1] + shares[3]
+}
+
+/// Both by level.
+fn interaction(shares: &[f64; PARTS]) -> f64 {
+    shares[2] + shares[4]
 }
 
 impl Sums {

@@ -4,23 +4,25 @@ use super::answer::Findings;
 use super::at_risk::AtRisk;
 use super::band_change::BandChangeLevel;
 use super::coincidence::Coincidence;
-use super::counts::Counts;
 use super::crossover::Crossover;
 use super::elevations::Row;
-use super::quantile::{quantile, sorted};
+use super::ranged::RANGE_METHOD;
 use super::record_coincidence::RecordCoincidence;
+use super::reference_years::YearValues;
 use super::resample::Resamples;
 use super::snow_drought::SnowDroughts;
 use super::snow_line::{Grounds, SnowLine};
 use crate::basin::Band;
 use crate::ensemble::Seasons;
 use crate::season::Measure;
-use ndarray::{Array3, ArrayView2, ArrayView3, Axis};
+use ndarray::{Array3, Axis};
 use serde::Serialize;
 
 /// What is found of places and of kinds of years.
 #[derive(Debug, Clone, PartialEq, Serialize)]
 pub struct Places {
+    /// How ranges over resampled realizations are made, and what has none.
+    pub method: String,
     /// Dry and warm years of the realizations; none where there is no cool season.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub coincidence: Option<Coincidence>,
@@ -42,6 +44,10 @@ pub struct Places {
     pub at_risk: Option<AtRisk>,
 }
 
+/// What has no range, and why.
+const WITHOUT_RANGE: &str = "Winter means are those of the record's years: the elevation of freezing, which bands are at risk and their \
+                             area rest on no realization and have no range";
+
 /// What is asked.
 #[derive(Clone, Copy)]
 pub struct PlacesQuestions<'a> {
@@ -57,6 +63,8 @@ pub struct PlacesQuestions<'a> {
     pub cool_mean_c: Option<&'a Array3<f64>>,
     /// Mean of the winter months over the record's years, `[level][band]`, degC.
     pub winter_mean_c: &'a [Vec<f64>],
+    /// A year is low in snow below this quantile of the headline SWE of the reference's single years.
+    pub low_snow_below_quantile: f64,
     /// The snow line lies where the headline SWE reaches this much, mm.
     pub snow_line_swe_mm: f64,
 }
@@ -83,77 +91,29 @@ impl Places {
             Crossover::all(&rows, &study.band_headline.view(), values, levels_c, reference, &resamples)
         });
         Some(Self {
-            coincidence: values.as_ref().and_then(|of| Coincidence::of(of, levels_c, reference, &resamples)),
+            method: format!(
+                "snow_line_resampled, snow_line_rise_resampled_m_per_c, volume_resampled_hm3, volume_share_resampled and the crossover's \
+                 range: {RANGE_METHOD}; of an elevation none also where that end lies outside the bands. {WITHOUT_RANGE}."
+            ),
+            coincidence: values.as_ref().and_then(|of| {
+                Coincidence::of(of, questions.low_snow_below_quantile, levels_c, reference, &resamples)
+            }),
             record_coincidence: None,
             snow_droughts: values
                 .as_ref()
                 .and_then(|of| SnowDroughts::of(of, levels_c, reference, &resamples)),
             crossover: crossover.unwrap_or_default(),
             band_change: BandChangeLevel::all(&findings.bands, &swe_mm, levels_c, reference),
-            snow_line: SnowLine::of(&grounds, questions.snow_line_swe_mm, levels_c, reference),
+            snow_line: SnowLine::of(&grounds, questions.snow_line_swe_mm, levels_c, reference, &resamples),
             at_risk: AtRisk::of(
                 bands,
                 &swe_mm.index_axis(Axis(0), reference),
                 winter_mean_c,
                 levels_c,
                 reference,
+                &resamples,
             ),
         })
-    }
-}
-
-/// Single years of the basin, `[level][realization][year]`.
-pub(super) struct YearValues<'a> {
-    /// The headline SWE, mm.
-    pub swe_mm: ArrayView3<'a, f64>,
-    /// Precipitation over the basin before its date, mm.
-    pub precipitation_mm: ArrayView3<'a, f64>,
-    /// Mean temperature at the station before its date, degC.
-    pub mean_c: ArrayView3<'a, f64>,
-}
-
-/// The same at one level, `[realization][year]`.
-pub(super) struct LevelYears<'a> {
-    pub swe_mm: ArrayView2<'a, f64>,
-    pub precipitation_mm: ArrayView2<'a, f64>,
-    pub mean_c: ArrayView2<'a, f64>,
-}
-
-impl YearValues<'_> {
-    pub fn at(&self, level: usize) -> LevelYears<'_> {
-        LevelYears {
-            swe_mm: self.swe_mm.index_axis(Axis(0), level),
-            precipitation_mm: self.precipitation_mm.index_axis(Axis(0), level),
-            mean_c: self.mean_c.index_axis(Axis(0), level),
-        }
-    }
-}
-
-impl LevelYears<'_> {
-    /// SWE, precipitation and temperature of every year.
-    pub fn years(&self) -> impl Iterator<Item = [f64; 3]> {
-        let both = self.precipitation_mm.iter().zip(self.mean_c.iter());
-        self.swe_mm
-            .iter()
-            .zip(both)
-            .map(|(swe_mm, (precipitation_mm, mean_c))| [*swe_mm, *precipitation_mm, *mean_c])
-    }
-
-    /// Medians of precipitation and temperature.
-    pub fn medians(&self) -> [f64; 2] {
-        [1, 2].map(|at| quantile(&sorted(self.years().map(|year| year[at])), 0.5))
-    }
-
-    /// Years by kind, realization by realization.
-    pub fn counted<const K: usize>(&self, kind: impl Fn([f64; 3]) -> Option<usize>) -> Counts<K> {
-        let (realizations, years) = self.swe_mm.dim();
-        let mut counts = vec![[0; K]; realizations];
-        for (at, year) in self.years().enumerate() {
-            if let Some(kind) = kind(year) {
-                counts[at / years][kind] += 1;
-            }
-        }
-        Counts(counts)
     }
 }
 

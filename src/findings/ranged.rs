@@ -1,6 +1,7 @@
 //! A number with the range in which other realizations of the same kind would put it.
 
 use super::quantile::{quantile, sorted};
+use super::record_range::Range;
 use serde::Serialize;
 
 /// How the ranges of the findings by year are made.
@@ -25,6 +26,11 @@ impl Ranged {
         let in_order = sorted(all.unwrap_or_default());
         let end = |share| Some(quantile(&in_order, share)).filter(|end| end.is_finite());
         Self { value, q05: end(0.05), q95: end(0.95) }
+    }
+
+    /// The range, where both its ends are known.
+    pub(super) fn range(self) -> Option<Range> {
+        Some(Range { q05: self.q05?, q95: self.q95? })
     }
 
     /// Whether the whole range lies above a number, or below it; nothing where it straddles, or is not known.

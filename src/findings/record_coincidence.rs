@@ -2,7 +2,6 @@
 
 use super::cells::Cells;
 use super::counts::share;
-use super::low_snow::LOW_SNOW_BELOW_QUANTILE;
 use super::quantile::{quantile, sorted};
 use crate::baseline::wilson;
 use serde::Serialize;
@@ -24,6 +23,8 @@ pub struct RecordCoincidence {
     pub fisher_p: Option<f64>,
     /// A year is low in snow below this headline SWE at the reference, mm: the quantile of the record's years that is stated.
     pub low_snow_below_mm: f64,
+    /// Its quantile among the record's years.
+    pub low_snow_below_quantile: f64,
     /// Low-snow years among those dry and warm.
     pub low_snow_given_dry_warm: Counted,
     /// Low-snow years among those dry and cool.
@@ -79,10 +80,10 @@ pub type RecordValues = (i32, [f64; 3]);
 impl RecordCoincidence {
     /// Of years in ascending order: the name, headline SWE, mm, cool-season precipitation over the basin, mm, and mean temperature at the
     /// station, degC. Nothing of no years.
-    pub fn of(years: &[RecordValues], last_years: usize) -> Option<Self> {
+    pub fn of(years: &[RecordValues], low_snow_below_quantile: f64, last_years: usize) -> Option<Self> {
         let all = |at: usize| sorted(years.iter().map(|(_, values)| values[at]));
         let [median_precipitation_mm, median_temperature_c] = [1, 2].map(|at| quantile(&all(at), 0.5));
-        let low_snow_below_mm = quantile(&all(0), LOW_SNOW_BELOW_QUANTILE);
+        let low_snow_below_mm = quantile(&all(0), low_snow_below_quantile);
         if !low_snow_below_mm.is_finite() {
             return None;
         }
@@ -124,6 +125,7 @@ impl RecordCoincidence {
             dependence: own.dependence(),
             fisher_p: own.fisher_p(),
             low_snow_below_mm,
+            low_snow_below_quantile,
             low_snow_given_dry_warm: warm,
             low_snow_given_dry_cool: cool,
             low_snow_ratio: warm.over(cool),
@@ -190,7 +192,7 @@ mod tests {
         let years: Vec<RecordValues> = (0..8)
             .map(|year| (2001 + year as i32, [swe_mm[year], (year + 1) as f64, mean_c[year]]))
             .collect();
-        let found = RecordCoincidence::of(&years, 2).expect("years");
+        let found = RecordCoincidence::of(&years, 0.2, 2).expect("years");
         assert_eq!(found.years, Cells { dry_warm: 2, dry_cool: 2, wet_warm: 2, wet_cool: 2 });
         assert_eq!((found.dependence, found.low_snow_below_mm), (Some(1.0), 20.0));
         assert_eq!((found.low_snow_given_dry_warm.count, found.low_snow_given_dry_cool.count), (1, 0));
@@ -200,7 +202,12 @@ mod tests {
         assert_eq!((periods.later.first_year, periods.later.last_year), (2007, 2008));
         assert_eq!((periods.earlier.dry_warm.count, periods.later.dry_warm.count), (2, 0));
         assert_eq!((periods.ratio, periods.are_apart), (Some(0.0), false));
-        assert_eq!(RecordCoincidence::of(&years, 8).expect("years").periods, None, "nothing before");
-        assert_eq!(RecordCoincidence::of(&[], 2), None);
+        assert_eq!(RecordCoincidence::of(&years, 0.2, 8).expect("years").periods, None, "nothing before");
+        assert_eq!(RecordCoincidence::of(&[], 0.2, 2), None);
+        // The median lies between 60 and 70 mm: years 1 to 4 are low, all that are dry.
+        let half = RecordCoincidence::of(&years, 0.5, 2).expect("years");
+        assert_eq!((half.low_snow_below_quantile, half.low_snow_below_mm), (0.5, 65.0));
+        assert_eq!((half.low_snow_given_dry_warm.count, half.low_snow_given_dry_cool.count), (2, 2));
+        assert_eq!(half.low_snow_ratio, Some(1.0));
     }
 }

@@ -72,6 +72,10 @@ impl Estimate {
 
 /// The sample standard deviation; none below two values or where it is not a number.
 pub(super) fn standard_deviation(values: &[f64]) -> Option<f64> {
+    // The sum over no values, 0, over n - 1, -1, would be an error of 0.
+    if values.len() < 2 {
+        return None;
+    }
     let n = values.len() as f64;
     let mean = values.iter().sum::<f64>() / n;
     let squares = values.iter().map(|value| (value - mean) * (value - mean)).sum::<f64>();
@@ -130,6 +134,16 @@ mod tests {
     use super::super::quantile;
     use super::*;
 
+    /// An identity: nothing varies among no values, or one, that a deviation could be told of. By hand: of 1 and 3 it is the root of 2.
+    #[test]
+    fn fewer_than_two_values_have_no_deviation() {
+        assert_eq!([standard_deviation(&[]), standard_deviation(&[7.0])], [None, None]);
+        assert_eq!(standard_deviation(&[1.0, 3.0]), Some(2.0_f64.sqrt()));
+        // One realization drawn again is the same: its error is not 0 but unknown.
+        let found = Estimate::new(1.0, Resamples::new(1, 1).each(|_| Some(1.0)));
+        assert_eq!(found.monte_carlo_error, None);
+    }
+
     /// A resample's quantiles are those of the values written out as often as they were drawn.
     #[test]
     fn weighted_quantiles_equal_written_out_ones() {
@@ -161,6 +175,32 @@ mod tests {
         let error = Estimate::new(18.6, resamples.each(mean)).monte_carlo_error.unwrap();
         assert!((error / 4.8973 - 1.0).abs() < 0.12, "{error}");
     }
+
+    /// SN-09: with a coefficient of variation of 0.30 the mean is known to 10.7 % of itself (1.96 errors) from 30 realizations, to
+    /// 5.9 % from 100 and to 5.0 % from 138 (sampling theory, 1.96 * 0.30/sqrt(n)). Drawn from the sample itself, the error is
+    /// sqrt((n - 1)/n) of that, 1.7 % too little at 30; 20 times 400 resamples know it to 0.8 %: 4 % in all, where 100
+    /// realizations for 138 would be 17 %.
+    #[test]
+    fn realizations_that_a_mean_takes() {
+        for (n, expected_pct) in [(30_u32, 10.7), (100, 5.9), (138, 5.0)] {
+            let score = |at: u32| crate::normal::score_of((f64::from(at) + 0.5) / f64::from(n));
+            let scores: Vec<f64> = (0..n).map(score).collect();
+            // Evenly spaced scores have the mean 0.
+            let squares: f64 = scores.iter().map(|z| z * z).sum();
+            let to_one = 0.30 / (squares / f64::from(n - 1)).sqrt();
+            let mean = |weights: &[u32]| {
+                let sum: f64 =
+                    scores.iter().zip(weights).map(|(z, w)| (1.0 + to_one * z) * f64::from(*w)).sum();
+                Some(sum / f64::from(n))
+            };
+            let error =
+                |seed| Estimate::new(1.0, Resamples::new(seed, n as usize).each(mean)).monte_carlo_error;
+            let error = (0..20).map(|seed| error(seed).unwrap()).sum::<f64>() / 20.0;
+            let found_pct = 100.0 * 1.96 * error;
+            assert!((found_pct / expected_pct - 1.0).abs() < 0.04, "{found_pct} % of {n}");
+        }
+    }
+
     /// A resample of n holds a given value with the chance 1 - (1 - 1/n)^n: 0.6513 for n = 10 and 0.6384 for n = 30 (Efron &
     /// Tibshirani 1993), so that extremes are understated. 10 000 resamples know it to 0.005; 0.02 is four times that.
     #[test]

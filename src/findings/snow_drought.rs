@@ -2,8 +2,7 @@
 
 use super::chance::Chance;
 use super::counts::share;
-use super::places::YearValues;
-use super::quantile::{quantile, sorted};
+use super::reference_years::{Limits, YearValues};
 use super::resample::Resamples;
 use serde::Serialize;
 
@@ -49,19 +48,12 @@ impl SnowDroughts {
         reference: usize,
         resamples: &Resamples,
     ) -> Option<Self> {
-        let at = values.at(reference);
-        let low_at_mm = quantile(&sorted(at.years().map(|[swe_mm, ..]| swe_mm)), DROUGHT_QUANTILE);
-        let median_precipitation_mm = quantile(&sorted(at.years().map(|[_, mm, _]| mm)), 0.5);
-        // Of years that are mostly bare no share is low.
-        let has_snow = low_at_mm.is_finite() && low_at_mm > 0.0;
-        if !has_snow || !median_precipitation_mm.is_finite() {
-            return None;
-        }
+        let limits = Limits::of(&values.at(reference), DROUGHT_QUANTILE).filter(Limits::has_snow)?;
         let levels = levels_c.iter().enumerate().map(|(level, level_c)| {
             // No drought, a dry one, a warm one.
             let counts = values.at(level).counted::<3>(|[swe_mm, precipitation_mm, _]| {
-                let is_low = swe_mm <= low_at_mm;
-                Some(usize::from(is_low) * (1 + usize::from(precipitation_mm >= median_precipitation_mm)))
+                let is_low = swe_mm <= limits.low_snow_mm;
+                Some(usize::from(is_low) * (1 + usize::from(precipitation_mm >= limits.precipitation_mm)))
             });
             let [_, dry_years, warm_years] = counts.all();
             let of = |kind: usize| counts.chance(|years| share(years[kind], years.iter().sum()), resamples);
@@ -76,9 +68,9 @@ impl SnowDroughts {
             }
         });
         Some(Self {
-            low_at_mm,
+            low_at_mm: limits.low_snow_mm,
             low_at_quantile: DROUGHT_QUANTILE,
-            median_precipitation_mm,
+            median_precipitation_mm: limits.precipitation_mm,
             levels: levels.collect(),
         })
     }

@@ -1,6 +1,7 @@
 //! Partition of variance between level, realization and set of parameters: the two-way table with one way more.
 
-use ndarray::{ArrayView3, Axis};
+use super::partition::AVERAGED_YEARS;
+use ndarray::{Array3, ArrayView3, Axis};
 use serde::Serialize;
 
 /// Three-way analysis of variance without replication: levels by shared realizations by sets of parameters.
@@ -27,6 +28,37 @@ pub struct ThreeWayShares {
     pub set: f64,
     /// Of what they do only together.
     pub remainder: f64,
+}
+
+/// Shares of means over so many years, one after another in each realization, every one of them a chance of its own.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+pub struct AveragedShares {
+    /// Years that are averaged.
+    pub years: usize,
+    /// The shares; that of the realization is of all that chance does to such means.
+    #[serde(flatten)]
+    pub shares: ThreeWayShares,
+}
+
+/// The shares over two levels by averaging period, of single years `[level][realization][year]`, a set each: of every period
+/// that a realization holds, years at its end that make no whole one left out. Empty where nothing varies, or sets are fewer than two.
+pub(super) fn averaged_shares(sets: &[Array3<f64>], levels: [usize; 2]) -> Vec<AveragedShares> {
+    let Some((_, realizations, length)) = sets.first().map(Array3::dim) else {
+        return Vec::new();
+    };
+    let of_years = |years: usize| {
+        let periods = length / years;
+        let mean = |set: usize, level: usize, at: usize| {
+            let (realization, first) = (at / periods, at % periods * years);
+            let all = (first..first + years).map(|year| sets[set][[level, realization, year]]);
+            all.sum::<f64>() / years as f64
+        };
+        let table = Array3::from_shape_fn((2, realizations * periods, sets.len()), |(level, at, set)| {
+            mean(set, levels[level], at)
+        });
+        Some(AveragedShares { years, shares: ThreeWay::of(&table.view())?.shares()? })
+    };
+    AVERAGED_YEARS.into_iter().filter(|years| *years <= length).filter_map(of_years).collect()
 }
 
 impl ThreeWay {
@@ -72,7 +104,7 @@ impl ThreeWay {
 mod tests {
     use super::*;
     use crate::findings::TwoWay;
-    use ndarray::{Array3, array};
+    use ndarray::array;
 
     /// By hand: levels 0 and 10, realizations -1, 0 and 1, sets 0 and 4 added up, and 1 more and less where a level and a set
     /// meet. Level 12*25, realization 4*2, set 12*4, remainder 12*1.
@@ -105,5 +137,24 @@ mod tests {
         assert!((three.level - 4.0 * two.level).abs() < 1e-6 && three.set.abs() < 1e-6);
         assert!((three.remainder - 4.0 * two.residual).abs() < 1e-6);
         assert_eq!(ThreeWay::of(&array![[[1.0], [2.0]], [[3.0], [5.0]]].view()), None);
+    }
+
+    /// By hand: two realizations of five years at -2, -1, 0, 1 and 2 about 100; the level takes 1, the other set adds 3. Single years vary by
+    /// a variance of 2, the level by 0.25, the set by 2.25; means over five years do not vary by chance.
+    #[test]
+    fn longer_means_leave_level_and_set() {
+        let set = |more: f64| {
+            Array3::from_shape_fn((2, 2, 5), |(level, _, year)| 98.0 + year as f64 - level as f64 + more)
+        };
+        let found = averaged_shares(&[set(0.0), set(3.0)], [0, 1]);
+        assert_eq!(found.iter().map(|of| of.years).collect::<Vec<_>>(), [1, 5]);
+        for (of, [level, chance, by_set]) in found.iter().zip([[0.25, 2.0, 2.25], [0.25, 0.0, 2.25]]) {
+            let total = level + chance + by_set;
+            let shares = [of.shares.level, of.shares.realization, of.shares.set, of.shares.remainder];
+            for (share, expected) in shares.iter().zip([level / total, chance / total, by_set / total, 0.0]) {
+                assert!((share - expected).abs() < 1e-9, "{} years: {shares:?}", of.years);
+            }
+        }
+        assert!(averaged_shares(&[set(0.0)], [0, 1]).is_empty(), "one set is none to tell apart");
     }
 }

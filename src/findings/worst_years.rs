@@ -16,6 +16,10 @@ pub struct WorstYear {
     pub water_year: i32,
     /// Its SWE in the model at the reference, mm.
     pub swe_mm: f64,
+    /// Years of the record with as little or less, itself among them: the plain count of which the simulated one is held.
+    pub record_years_as_low: usize,
+    /// Years of the record.
+    pub record_years: usize,
     /// One entry a level.
     pub levels: Vec<ReturnOfYear>,
 }
@@ -51,13 +55,15 @@ pub(super) fn worst_years(
     let of_year = |(water_year, swe_mm): (i32, f64)| WorstYear {
         water_year,
         swe_mm,
+        record_years_as_low: in_order.iter().filter(|(_, mm)| *mm <= swe_mm + ROUNDING_MM).count(),
+        record_years: in_order.len(),
         levels: levels_c
             .iter()
             .zip(years)
             .map(|(level_c, years)| return_of_year(*level_c, swe_mm, years, realizations, resamples))
             .collect(),
     };
-    in_order.into_iter().take(WORST_YEARS).map(of_year).collect()
+    in_order.iter().copied().take(WORST_YEARS).map(of_year).collect()
 }
 
 fn return_of_year(
@@ -95,6 +101,17 @@ fn return_of_year(
 mod tests {
     use super::*;
 
+    /// By hand: two years of the record share 4 mm, so that either is one of the two lowest of three; a year without a number
+    /// counts nowhere.
+    #[test]
+    fn years_of_the_record_that_tie_count_alike() {
+        let years = [Ranked::new((1..=100_usize).map(|mm| (mm as f64, mm % 20)))];
+        let record = [(1999, 4.0), (1977, 9.0), (2015, 4.0), (2001, f64::NAN)];
+        let found = worst_years(&record, &years, &[0.0], 20, &Resamples::new(1, 20));
+        let told = found.iter().map(|year| (year.water_year, year.record_years_as_low, year.record_years));
+        assert_eq!(told.collect::<Vec<_>>(), [(1999, 2, 3), (2015, 2, 3), (1977, 3, 3)]);
+    }
+
     /// By hand: of 1 to 100 mm, 4 lie at or below 4 mm, one in 25 years; none at or below half a millimetre, which is rarer
     /// than one in 100 and has no period. No end of a range goes beyond the 100 years.
     #[test]
@@ -103,6 +120,8 @@ mod tests {
         let record = [(1999, 80.0), (1977, 0.5), (2015, 4.0), (2001, 90.0)];
         let found = worst_years(&record, &years, &[0.0], 20, &Resamples::new(1, 20));
         assert_eq!(found.iter().map(|year| year.water_year).collect::<Vec<_>>(), [1977, 2015, 1999]);
+        let in_the_record = found.iter().map(|year| [year.record_years_as_low, year.record_years]);
+        assert_eq!(in_the_record.collect::<Vec<_>>(), [[1, 4], [2, 4], [3, 4]]);
         assert_eq!((found[0].levels[0].return_period_years, found[0].levels[0].years_as_low), (None, 0));
         assert!(found[0].levels[0].bound.is_some());
         let period = found[1].levels[0].return_period_years.unwrap();

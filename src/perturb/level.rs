@@ -108,6 +108,14 @@ impl Warming {
         }
     }
 
+    /// Whether precipitation changes at any of these levels, or its wet days do.
+    pub fn changes_precipitation(&self, levels_c: &[f64]) -> bool {
+        let is_stated =
+            |level_c: &f64| self.precipitation.factor(*level_c).iter().any(|factor| *factor != 1.0);
+        let wet_days_change = self.wet_day_intensity_pct_per_c.is_some_and(|pct_per_c| pct_per_c != 0.0);
+        wet_days_change || levels_c.iter().any(is_stated)
+    }
+
     /// What the level's temperature change is multiplied by at an elevation of the basin, `1 + e/100*(z - z_mean)/1000`: its
     /// area-weighted mean over the bands is 1, so that the basin warms by the level. 1 to the bit where warming is even.
     pub fn factor_at(&self, elevation_m: f64, basin: &Basin) -> f64 {
@@ -154,6 +162,25 @@ impl Warming {
 #[cfg(test)]
 mod tests {
     use super::*;
+
+    /// By definition: 0 % per degree changes nothing, 2 % do but at 0 degC; a change stated for a level that is not run is none;
+    /// wet days that intensify are a change.
+    #[test]
+    fn a_change_of_precipitation_is_told_from_none() {
+        let plain = Warming::default();
+        let pct_per_c =
+            Warming { precipitation: PrecipitationChange::PctPerC([2.0; 12]), ..Warming::default() };
+        let stated = vec![StatedChange { level_c: 3.0, pct: [5.0; 12] }];
+        let by_level =
+            Warming { precipitation: PrecipitationChange::PctByLevel(stated), ..Warming::default() };
+        let wet_days = Warming { wet_day_intensity_pct_per_c: Some(7.0), ..Warming::default() };
+        let no_wet_days = Warming { wet_day_intensity_pct_per_c: Some(0.0), ..Warming::default() };
+        let told = [&plain, &pct_per_c, &by_level, &wet_days, &no_wet_days].map(|warming| {
+            [&[0.0, 2.0][..], &[0.0, 3.0], &[0.0]].map(|at| warming.changes_precipitation(at))
+        });
+        let expected = [[false; 3], [true, true, false], [false, true, false], [true; 3], [false; 3]];
+        assert_eq!(told, expected);
+    }
     use crate::basin::{Band, GradientForm, Ground, PrecipitationGradient, TemperatureGradient};
 
     fn basin() -> Basin {

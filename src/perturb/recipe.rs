@@ -26,6 +26,14 @@ impl GeneratorChoice {
         }
     }
 
+    /// Whether realizations are the record's own years in another order, so that its weather comes again and none other.
+    pub fn redraws_years(&self) -> bool {
+        match self {
+            Self::YearBlocks { .. } => true,
+            Self::MarkovGamma => false,
+        }
+    }
+
     /// Mean length of a run of the record's years, where it takes such runs.
     pub fn mean_run_years(&self) -> Option<f64> {
         match self {

@@ -8,6 +8,7 @@ mod daily;
 mod fit;
 mod generator_sheet;
 mod json;
+mod methods;
 mod normal;
 pub mod numbers;
 mod observed;

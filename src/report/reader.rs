@@ -91,8 +91,13 @@ impl Reader {
     /// `154 m for each °C`: how far a line rises with warming.
     pub fn elevation_per_degree(self, rise_m_per_c: f64) -> String {
         let (elevation, warming) = (self.units.elevation(), self.units.warming());
-        let rise = fixed(elevation.of(rise_m_per_c) / warming.of(1.0), 0);
+        let rise = self.elevation_per_degree_bare(rise_m_per_c);
         format!("{rise} {} for each {}", elevation.word, warming.word)
+    }
+
+    /// The same without its units.
+    pub fn elevation_per_degree_bare(self, rise_m_per_c: f64) -> String {
+        fixed(self.units.elevation().of(rise_m_per_c) / self.units.warming().of(1.0), 0)
     }
 
     /// The same without its unit.

@@ -3,6 +3,7 @@
 use super::SCHEMA_VERSION;
 use super::answer::Answer;
 use super::json::lines;
+use super::methods::{METHODS, Method};
 use super::study::{FittedFrom, Input, Origin, SetsFrom, Study};
 use crate::baseline::{Baseline, BaselineYears, Detrended};
 use crate::basin::BeyondStations;
@@ -24,6 +25,7 @@ struct Summary<'a> {
     units: UnitsSaid,
     answer: &'a Answer,
     quantiles: &'static str,
+    methods: &'static [Method],
     season: &'a SeasonSettings,
     basin: BasinSummary,
     record: RecordSummary<'a>,
@@ -96,6 +98,7 @@ pub fn summary_json(study: &Study<'_>, answer: &Answer) -> serde_json::Result<Ve
         answer,
         quantiles: "Hyndman & Fan (1996) type 8; amounts in mm, SWE area in mm days, shares from 0 to 1, counts of \
                     days, dates as day of the water year counted from 1",
+        methods: METHODS,
         season: study.season,
         basin: BasinSummary {
             area_km2: basin.area_km2(),

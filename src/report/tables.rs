@@ -52,6 +52,7 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     }
     if let Some(spread) = &findings.parameter_spread {
         add("parameter-spread", parameter_spread::parameter_spread(spread, units));
+        add("variance-with-parameters", parameter_spread::variance_with_parameters(spread, units));
     }
     if let Some(panel) = &findings.rule_panel {
         add("rule-panel", rule_panel::rule_panel(panel, units));

@@ -114,6 +114,82 @@ fn without_the_warming_so_far() {
         assert!(said.contains("cannot be told"), "{said}");
     }
     assert!(!said.contains("caused by"), "{said}");
+    // Stone & Allen (2005, from memory): 1 - p0/p1; told beside a ratio that is told.
+    let fraction = &low["without_warming"][0]["attributable_fraction"];
+    if colder > 0.0 && now > colder {
+        assert!((number(&fraction["value"]) - (1.0 - colder / now)).abs() < 1e-12, "{low}");
+    } else {
+        assert_eq!(*fraction, Value::Null);
+    }
+    assert_eq!(said.contains("come on top"), said.contains("not what caused any year"), "{said}");
+    // With more of the warming taken away the odds move beyond chance, and the share is told.
+    basin.exchange("levels_c = [-0.5, 0, 2]", "levels_c = [-1, 0, 2]");
+    basin.exchange("count = 12", "count = 60");
+    let summary = study(&basin, "scenario.toml");
+    let colder = &summary["findings"]["by_year"]["low_snow"]["without_warming"][0];
+    assert!(number(&colder["chance_ratio"]["q05"]) > 1.0, "else nothing comes on top: {colder}");
+    let [value, low, high] = ["value", "q05", "q95"]
+        .map(|end| format!("{:.0}", 100.0 * number(&colder["attributable_fraction"][end])));
+    let told = format!(
+        "so that {value} % ({low} to {high} %) of them come on top (a sensitivity, not a formal attribution)"
+    );
+    let said = sentences(&summary).join("\n");
+    assert!(said.contains(&told), "{told}: {said}");
+}
+
+/// What a level does is named in full where it brings a change of precipitation: in the sentences of the variance and of the
+/// climate without the warming so far, and in the figure.
+#[test]
+fn a_stated_change_of_precipitation_is_named_with_the_warming() {
+    let basin = with_years_that_differ();
+    basin.exchange("levels_c = [0, 2]", "levels_c = [-2, 0, 2]");
+    let told = |basin: &Basin| {
+        let said = sentences(&study(basin, "scenario.toml"));
+        let without = said.iter().find(|said| said.contains("2 °C of warming")).unwrap().clone();
+        [said[0].clone(), without, basin.read("out/figures/variance-by-averaging-period.svg")]
+    };
+    let both = "warming with its stated change of precipitation";
+    assert!(told(&basin).iter().all(|words| words.contains("warming") && !words.contains(both)));
+    basin.exchange("levels_c = [-2, 0, 2]", "levels_c = [-2, 0, 2]\nprecipitation_change_pct_per_c = 3");
+    let told = told(&basin);
+    assert!(told[0].contains(&format!("the {both} holds the largest share")), "{}", told[0]);
+    assert!(told[1].contains(&format!("2 °C of {both}")), "{}", told[1]);
+    // The figure's title breaks into lines; its name for those who do not see it is whole.
+    assert!(told[2].contains(&format!("°C of {both}")), "{}", told[2]);
+}
+
+/// Three winters come back over and over: years below the middle one are those of the lowest, of which the worst years' own count
+/// tells how many there are, and those at the limit are the middle one's. Neither is the stated half, and the words say so; the
+/// record's own count, one winter of three, stands beside the simulated return.
+#[test]
+fn winters_that_come_back_are_told_as_such() {
+    let basin = Basin::new();
+    basin.exchange("[realizations]", "[findings.low_snow]\nbelow_quantile = 0.5\n\n[realizations]");
+    let summary = study(&basin, "scenario.toml");
+    let by_year = &summary["findings"]["by_year"];
+    let [lowest, middle] = [0, 1].map(|year| &by_year["worst_years"][year]);
+    let as_low = |year: &Value| number(&year["levels"][0]["years_as_low"]);
+    let low = &by_year["low_snow"];
+    assert_eq!(number(&low["levels"][0]["low_years"]), as_low(lowest), "{low}");
+    assert_eq!(number(&low["years_at_limit"]), as_low(middle) - as_low(lowest), "{low}");
+    assert_eq!([number(&lowest["record_years_as_low"]), number(&middle["record_years_as_low"])], [1.0, 2.0]);
+    assert_eq!(number(&lowest["record_years"]), 3.0);
+    assert!(as_low(lowest) < 30.0, "else the sample has no difference to tell: {low}");
+    let said = sentences(&summary).join("\n");
+    let own = format!("At the reference itself {:.1} % (", 100.0 * as_low(lowest) / 60.0);
+    assert!(said.contains(&own) && said.contains("are low, not 50 %"), "{said}");
+    assert!(
+        said.contains("in the record itself it is 1 in 3. The realizations are the record's own winters"),
+        "{said}"
+    );
+    assert!(!said.contains("assumed change of mean precipitation"), "{said}");
+    let worst = basin.read("out/tables/worst-years.csv");
+    let mut lines = worst.lines().map(|line| line.split(',').collect::<Vec<_>>());
+    let header = lines.next().unwrap();
+    let at = header.iter().position(|name| *name == "record_years_as_low").unwrap();
+    assert_eq!(lines.next().unwrap()[at..at + 2], ["1", "3"], "{worst}");
+    let page = basin.read("out/briefing.html");
+    assert!(page.contains("<td>1 in 3</td>") && page.contains("<td>2 in 3</td>"), "the plain count");
 }
 
 /// In the cold demo basin precipitation rules the years: words on which share is largest and on low-snow odds are those of the
@@ -127,6 +203,9 @@ fn the_cold_demo_speaks_for_its_numbers() {
     let summary = study(&basin, path);
     let by_year = &summary["findings"]["by_year"];
     let said = sentences(&summary);
+    // Weather drawn day by day is not the record's own winters.
+    assert!(said.iter().any(|said| said.contains("; in the record itself it is 1 in ")), "{said:?}");
+    assert!(!said.iter().any(|said| said.contains("record's own winters")), "{said:?}");
     let first = &by_year["measures"][0]["partitions"][0];
     let sides: Vec<Option<bool>> = first["periods"]
         .as_array()
@@ -158,6 +237,13 @@ fn the_cold_demo_speaks_for_its_numbers() {
     assert!(of_one.starts_with("at +1 °C") && of_one.contains(&words), "{words}: {said:?}");
     assert_eq!(sides[0], Some(false), "of single years the weather is the largest part: {first}");
     assert!(first["warming_holds_most"]["warming_holds_most"] != "always");
+    // A headline: it stands at a glance, too.
+    let at_a_glance = summary["answer"]["at_a_glance"].as_array().unwrap().iter();
+    let asked = at_a_glance.filter(|asked| asked["question"] == "In single years, or only in long means?");
+    assert_eq!(
+        asked.map(|asked| asked["answer"][0].as_str().unwrap()).collect::<Vec<_>>(),
+        [said[0].as_str()]
+    );
     // Two degrees above the reference, or the level next to it, is what the sentence tells.
     let at_two = &by_year["low_snow"]["levels"][2];
     let percent = format!("{:.0} %", 100.0 * number(&at_two["chance"]["value"]));

@@ -31,7 +31,7 @@ fn the_demos_speak_for_their_numbers() {
     assert!(sentence.starts_with("At +1 °C") && sentence.contains("does not outweigh"), "{sentence}");
     assert!(page.contains(sentence));
     let verdict = cold["answer"]["verdict"].as_str().unwrap();
-    assert!(verdict.ends_with("up to there, precipitation outweighs the warming."), "{verdict}");
+    assert!(verdict.contains("precipitation outweighs the warming."), "{verdict}");
     // A degree there is made up by a few percent, which precipitation's chance brings often; by the wider assumption no level
     // of the study outweighs it.
     assert!(said(&cold, "yardstick").contains("at no level up to +4 °C with twice as much"));
@@ -270,9 +270,54 @@ fn a_level_too_near_to_call_is_not_called() {
     let ratio = &headline["levels"][1]["signal_to_spread"];
     let [value, error] = ["value", "monte_carlo_error"].map(|name| ratio[name].as_f64().unwrap());
     assert!((value - 1.0).abs() < 1.645 * error, "{ratio}");
+    // Just above it these realizations have it outweigh, but others might not.
+    basin.write(
+        path,
+        &scenario.replace("levels_c = [0, 1, 2, 3, 4]", &format!("levels_c = [0, {}]", 1.01 * from_c)),
+    );
+    let (above, _) = study(&basin, path);
+    assert_eq!(above["findings"]["basin"][0]["outweighs"]["crossing"], "at");
+    let verdict = above["answer"]["verdict"].as_str().unwrap();
+    assert!(
+        verdict.starts_with("Below about +") && verdict.contains("these realizations cannot tell"),
+        "{verdict}"
+    );
+    assert!(verdict.contains("others of the same kind might at no level"), "{verdict}");
+    let title = basin.read("out/figures/swe-by-level.svg");
+    assert!(
+        title.contains("cannot tell whether the shift outweighs"),
+        "the figure says no more than the page"
+    );
     let amount = near["answer"]["amounts"][0].as_str().unwrap();
     assert!(
         amount.contains("so near 1 that these realizations cannot tell whether it outweighs it"),
         "{amount}"
     );
+}
+
+/// Of one realization nothing is known of how far others would move a number, and of two hardly anything: no error is told as 0, and no
+/// verdict.
+#[test]
+fn realizations_too_few_for_an_error_have_none_and_no_verdict() {
+    let basin = Basin::new();
+    assert_eq!(basin.run("start demo --quiet").status, 0);
+    let path = "demo/scenarios/alder-fork.toml";
+    let scenario = basin.read(path);
+    for count in [1, 2] {
+        let few = format!("[realizations]\ncount = {count}\nyears = 10\n");
+        basin.write(path, &scenario.replace("[realizations]\n", &few));
+        let (found, page) = study(&basin, path);
+        let level = &found["findings"]["basin"][0]["levels"][2];
+        assert!(count > 1 || level["shift"]["median"]["monte_carlo_error"].is_null(), "{level}");
+        let answer = &found["answer"];
+        for (sentence, so) in
+            [(&answer["verdict"], "outweighs the precipitation spread of"), (&answer["amounts"][1], "so it")]
+        {
+            let sentence = sentence.as_str().unwrap();
+            let is_told = sentence.contains(so)
+                && !["cannot tell", "too few", "cannot be said"].iter().any(|open| sentence.contains(open));
+            assert!(!is_told, "{count}: {sentence}");
+        }
+        assert!(!page.contains("± 0.000"), "{count}");
+    }
 }

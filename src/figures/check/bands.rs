@@ -53,6 +53,38 @@ fn titles_hold_where_all_lose_where_some_gain_and_where_none_loses() {
     );
 }
 
+/// By hand: changes spread by 10 % about their median. Where the highest band gains 100 mm a degree it changes by 400 - 384 mm, and
+/// the realizations by 400 - 384*(0.9 to 1.1) mm, which holds 0: neither figure counts it, though its median gains. One band that
+/// changes by 244 - 240*(0.9 to 1.1) mm cannot be told in either.
+#[test]
+fn both_figures_count_bands_by_the_same_rule() {
+    let titles = |study: &Study<'_>| {
+        let drawn = study.draw_in(UnitSystem::Metric, "Alder Fork", 10);
+        ["swe-by-band", "swe-change-by-band"].map(|slug| {
+            let id = format!("id=\"{slug}-title\"");
+            drawn.iter().find(|svg| svg.text.contains(&id)).unwrap().title.clone()
+        })
+    };
+    assert_eq!(
+        titles(&Study { highest_gains_mm: 100.0, ..PLAIN }),
+        [
+            "At +4 °C, 1 April SWE falls furthest at 2\u{2009}300–2\u{2009}600 m: 240 mm (56 %)",
+            "At +4 °C, 2 of 3 elevation bands lose snow water and none gains"
+        ]
+    );
+    assert_eq!(
+        titles(&Study { highest_gains_mm: 150.0, ..PLAIN })[1],
+        "At +4 °C, 2 of 3 elevation bands lose snow water and 1 gains"
+    );
+    assert_eq!(
+        titles(&Study { edges_m: &[900.0, 3300.0], highest_gains_mm: 61.0, ..PLAIN }),
+        [
+            "At +4 °C, 1 April SWE cannot be told to fall or to rise at any elevation",
+            "At +4 °C, no elevation band can be told to lose or gain snow water"
+        ]
+    );
+}
+
 /// A band whose reference has 3.6 mm says how much it loses, and no percentage; that of 14.4 mm says both.
 #[test]
 fn bands_with_hardly_any_snow_have_no_percentage() {

@@ -186,6 +186,7 @@ impl Study<'_> {
                 precipitation: &seasons.basin.measures[0].name,
                 cool_mean_c: Some(&cool_mean_c),
                 winter_mean_c: &winter_mean_c,
+                low_snow_below_quantile: 0.2,
                 snow_line_swe_mm: 100.0,
             },
             &findings,
@@ -211,6 +212,10 @@ impl Study<'_> {
                 seed: 7,
                 low_snow_below_quantile: 0.2,
                 warming_rate: None,
+                redraws_years: true,
+                changes_mean: false,
+                // So that either wording is laid out.
+                levels_change_precipitation: self.levels_c.len() > 5,
                 record: &[],
                 bands,
             },

@@ -3,7 +3,7 @@
 use super::super::labels::{is_nothing, level, percent_size, sentence, size_and_unit};
 use super::super::shown::Shown;
 use super::Found;
-use crate::findings::{Findings, MeasureFindings};
+use crate::findings::{Findings, MeasureFindings, Range, Sign};
 use crate::units::UnitSystem;
 
 /// A band's change at the level that is spoken of.
@@ -12,6 +12,8 @@ struct Change<'a> {
     found: Found<'a>,
     change_mm: f64,
     percent: Option<f64>,
+    /// Whether it loses or gains, as wherever bands are counted: by the range of its changes.
+    sign: Sign,
 }
 
 /// `At +4 °C, 1 April SWE falls furthest at 2 600–2 900 m: 180 mm (45 %); the largest share, 97 %, at 1 800–2 000 m`.
@@ -31,17 +33,18 @@ pub(super) fn title(
         .iter()
         .filter_map(|found| {
             let level = found.at(at)?;
+            let shift = level.shift?;
             Some(Change {
                 found: *found,
-                change_mm: level.shift?.median.value,
+                change_mm: shift.median.value,
                 percent: level.percent_change,
+                sign: Sign::of(Range { q05: shift.q05, q95: shift.q95 }),
             })
         })
         .collect();
-    let moved = || changes.iter().filter(|change| !is_nothing(units, change.change_mm));
+    let of = |sign: Sign| changes.iter().filter(move |change| change.sign == sign);
     let by_amount = |a: &&Change<'_>, b: &&Change<'_>| a.change_mm.total_cmp(&b.change_mm);
-    let lowest = moved().min_by(by_amount).filter(|change| change.change_mm < 0.0);
-    let highest = moved().max_by(by_amount).filter(|change| change.change_mm > 0.0);
+    let (lowest, highest) = (of(Sign::Loses).min_by(by_amount), of(Sign::Gains).max_by(by_amount));
     let where_ = |change: &Change<'_>| change.found.name(units);
     let how_much = |change: &Change<'_>| {
         let percent =
@@ -50,7 +53,12 @@ pub(super) fn title(
     };
     match (lowest, highest) {
         _ if changes.is_empty() => format!("{} has no value to compare at {place}", sentence(name)),
-        (None, None) => format!("{} is unchanged at every elevation at {place}", sentence(name)),
+        (None, None) if changes.iter().all(|change| is_nothing(units, change.change_mm)) => {
+            format!("{} is unchanged at every elevation at {place}", sentence(name))
+        }
+        (None, None) => {
+            format!("At {place}, {name} cannot be told to fall or to rise at any elevation")
+        }
         (Some(change), None) | (None, Some(change)) if bands.len() == 1 => {
             let direction = if change.change_mm < 0.0 { "lower" } else { "higher" };
             format!(
@@ -66,7 +74,7 @@ pub(super) fn title(
             how_much(most)
         ),
         (Some(most), Some(gains)) => {
-            let gaining = moved().filter(|change| change.change_mm > 0.0).count();
+            let gaining = of(Sign::Gains).count();
             let gain = if gaining == 1 { "gains" } else { "gain" };
             format!(
                 "At {place}, {name} falls furthest at {}: {}; {gaining} of {} bands {gain}, at most {} at {}",
@@ -78,7 +86,7 @@ pub(super) fn title(
             )
         }
         (Some(most), None) => {
-            let shares = moved().filter_map(|change| Some((change, change.percent?)));
+            let shares = of(Sign::Loses).filter_map(|change| Some((change, change.percent?)));
             let share = shares.min_by(|a, b| a.1.total_cmp(&b.1));
             // Shares that are written the same are the same to a reader.
             let most_share = most.percent.map(percent_size);
@@ -87,7 +95,7 @@ pub(super) fn title(
                 let written = percent_size(percent);
                 let is_tie =
                     |change: &&Change<'_>| change.percent.map(percent_size).as_ref() == Some(&written);
-                match moved().filter(is_tie).count() {
+                match of(Sign::Loses).filter(is_tie).count() {
                     0 | 1 => format!("; the largest share, {written} %, at {}", where_(change)),
                     bands => format!("; the largest share, {written} %, in {bands} bands"),
                 }

@@ -60,7 +60,10 @@ impl Words {
             )
         });
         let changes_of = farthest.map_or_else(String::new, |(_, level_c)| {
-            format!(" Change at {}: the median of paired changes{percent}.", level(units, *level_c))
+            format!(
+                " Change at {}: the median of paired changes{percent}. A band falls or gains where their 5–95 % over realizations lies on one side of 0.",
+                level(units, *level_c)
+            )
         });
         let have_parts = bands.iter().any(|found| found.apart.is_some());
         let [of_key, of_caption] = if have_parts { PARTS } else { [""; 2] };

@@ -92,4 +92,23 @@ mod tests {
         assert!((outside_by_chance(300) - 30.7 / 301.0).abs() < 1e-15);
         assert!((outside_by_chance(13) - 2.0 / 14.0).abs() < 1e-12);
     }
+
+    /// WG-14: a standard deviation from 30 years is off by 13 % (normal theory), so that one a tenth too large says nothing. The
+    /// 5-95 % range of such deviations is sqrt(17.708/29) to sqrt(42.557/29), 0.781 to 1.211 (table of chi-square, 29 degrees
+    /// of freedom); 2000 of them know its ends to 0.006, and 0.02 is three times that.
+    #[test]
+    fn a_tenth_too_much_deviation_is_no_finding_from_thirty_years() {
+        use super::super::moments::standard_deviation;
+        use rand_distr::{Distribution, StandardNormal};
+        let mut random = crate::perturb::stream(31, 0);
+        let mut of_thirty_years = || {
+            let years: Vec<f64> = (0..30).map(|_| StandardNormal.sample(&mut random)).collect();
+            standard_deviation(&years).unwrap()
+        };
+        let deviations: Vec<f64> = (0..2000).map(|_| of_thirty_years()).collect();
+        let range = RealizationRange::of(&deviations).unwrap();
+        assert!((range.q05 - 0.781).abs() < 0.02 && (range.q95 - 1.211).abs() < 0.02, "{range:?}");
+        let found = [0.9, 1.1, 0.7, 1.3].map(|deviation| range.judge(deviation));
+        assert_eq!(found, [Verdict::Within, Verdict::Within, Verdict::Below, Verdict::Above]);
+    }
 }

@@ -45,7 +45,8 @@ fn spread(loss: f64, sets: &[(f64, f64)]) -> Option<ParameterSpread> {
     let study = [asked.find(levels, &Resamples::new(1, REALIZATIONS)).findings];
     let of_set = |(median, loss): &(f64, f64)| periods(*median, *loss).insert_axis(Axis(1));
     let own = own.insert_axis(Axis(1));
-    let runs = SetRuns { measures, periods: sets.iter().map(of_set).collect(), own };
+    let runs =
+        SetRuns { measures, periods: sets.iter().map(of_set).collect(), headline_years: Vec::new(), own };
     ParameterSpread::of(&runs, &study, &LEVELS_C, 0)
 }
 
@@ -59,7 +60,7 @@ fn parameters_may_outweigh_warming() {
     let measure = &found.measures[0];
     let found = [measure.own_reference, measure.reference.lowest, measure.reference.highest];
     assert_eq!(found, [300.0, 120.0, 500.0]);
-    let level = measure.levels[0];
+    let level = &measure.levels[0];
     assert_eq!([level.level_c, level.shift.lowest, level.shift.highest], [2.0, -70.0, -50.0]);
     let weighed = level.weighed.expect("a shift");
     assert_eq!([weighed.warming, weighed.precipitation, weighed.parameters], [60.0, 20.0, 180.0]);

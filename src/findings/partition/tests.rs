@@ -72,6 +72,45 @@ fn a_table_by_hand() {
     }
 }
 
+/// By hand: in each of 200 realizations, half of which lie 3 above and half 3 below, five years stand 3, -3, 1, -1 and 0 about
+/// the realization, and the level lies 5.8 higher everywhere. The level's part is 2.9^2, 8.41. Means over five years vary by
+/// 9*200/199, 9.0452; single years by 20/4 within a realization, so that the realization's part of them is 9.0452 - 5/5,
+/// 8.0452, and the year's 5. Part by part the level would be the largest in single years (8.41 against 8.0452) and not in
+/// five-year means (8.41 against 9.0452), which no answer fits; against chance as a whole, 13.0452 and 9.0452, it never is.
+#[test]
+fn the_warming_is_held_against_chance_as_a_whole_at_every_length() {
+    let about = [3.0, -3.0, 1.0, -1.0, 0.0];
+    let reference = Array2::from_shape_fn((200, 5), |(r, y)| 100.0 + [3.0, -3.0][r % 2] + about[y]);
+    let level = &reference + 5.8;
+    let found = Partition::of(1.0, &reference.view(), &level.view(), &Resamples::new(1, 200)).unwrap();
+    let [single, five] = &found.periods[..] else { panic!("{found:?}") };
+    let near = |found: Ranged, expected: f64| assert!((found.value - expected).abs() < 1e-6, "{found:?}");
+    let (of_realizations, level) = (9.0 * 200.0 / 199.0, 8.41);
+    let (of_single, of_five) = (of_realizations + 4.0 + level, of_realizations + level);
+    near(single.chance, (of_realizations + 4.0) / of_single);
+    near(single.interaction, 0.0);
+    near(single.level_less_largest_other, (level - of_realizations - 4.0) / of_single);
+    near(five.chance, of_realizations / of_five);
+    near(five.level_less_largest_other, (level - of_realizations) / of_five);
+    assert_eq!(found.warming_holds_most, HoldsMost::Never);
+}
+
+/// By hand: the middle is the same everywhere; half differences are -2 and 4 in either year of one realization, and 0 and 6 in
+/// those of the other: the level's part is 2^2 less its sampling variance, the years within vary by 18, realizations' means of 1
+/// and 3 by 2, which is less than 18/2. So there is no chance, the level's part is 4 - 2/2, and the interaction's 18 of 21.
+#[test]
+fn the_warming_is_held_against_how_differently_years_take_it() {
+    let half = array![[-2.0, 4.0], [0.0, 6.0]];
+    let [reference, level]: [Array2<f64>; 2] = [100.0 - &half, 100.0 + &half];
+    let found = Partition::of(1.0, &reference.view(), &level.view(), &Resamples::new(1, 2)).unwrap();
+    let period = &found.periods[0];
+    for (share, expected) in
+        [(period.chance, 0.0), (period.interaction, 18.0), (period.level_less_largest_other, 3.0 - 18.0)]
+    {
+        assert!((share.value - expected / 21.0).abs() < 1e-12, "{period:?}");
+    }
+}
+
 /// A known model: with 400 realizations of 30 years the shares of every averaging period are its own to 0.03 (its widest
 /// part, the realizations' variance of 9, is known to 7 %), and they add up to 1, an identity.
 #[test]
@@ -110,6 +149,30 @@ fn ranges_hold_the_truth_nine_times_in_ten() {
     });
     let share = holds.count() as f64 / 200.0;
     assert!((0.82..=0.97).contains(&share), "{share}");
+}
+
+/// SN-10: chance dominates early, the signal late (Hawkins & Sutton 2009, BAMS 90:1095; their equations from memory). Of years
+/// that vary by 10 about a mean that warming lowers by D, the level's part of N-year means is (D/2)^2 against 100/N of chance:
+/// 1 against 100 to 3.3 at D = 2, never the larger; 25 against 100, 20, 10 and 3.3 at D = 10, from five years on; 225 against
+/// 100 and less at D = 30, always. 400 realizations of 30 years know the part of chance to 1 % in single years and to 7 % in
+/// 30-year means, the level's at D = 10 to 2 % of it: 0.02 of the shares.
+#[test]
+fn chance_dominates_at_small_warming_and_in_short_means() {
+    let early =
+        |change: f64| Model { realization: 0.0, year: 10.0, by_realization: 0.0, by_year: 0.0, change };
+    let found = [-2.0, -10.0, -30.0].map(|change| {
+        let [reference, level] = early(change).draw(11, 400, 30);
+        let found = Partition::of(1.0, &reference.view(), &level.view(), &Resamples::new(1, 400)).unwrap();
+        for period in &found.periods {
+            let (level, chance) = (change * change / 4.0, 100.0 / period.years as f64);
+            let expected = level / (level + chance);
+            assert!((period.level.value - expected).abs() < 0.02, "{period:?}, not {expected}");
+            assert!((period.chance.value - (1.0 - expected)).abs() < 0.02, "{period:?}");
+        }
+        found.warming_holds_most
+    });
+    let expected = [HoldsMost::Never, HoldsMost::From { years: 5, is_blurred: false }, HoldsMost::Always];
+    assert_eq!(found, expected);
 }
 
 /// Words turn with the numbers: no change is never the largest, a change far above all else always is, and a tie cannot be

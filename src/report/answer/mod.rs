@@ -2,6 +2,8 @@
 
 mod break_even;
 mod chance;
+mod dry_and_warm;
+mod elevations;
 mod how_sure;
 mod parameters;
 mod place;
@@ -19,6 +21,7 @@ pub(super) use slopes::{per_degree, percent};
 pub use years::{in_years, range, years_of};
 
 use super::reader::Reader;
+use crate::figures::cause;
 use crate::findings::{Findings, LevelFindings, MeasureFindings, Spread};
 use crate::perturb::Warming;
 use crate::season::{Kind, LEAST_REFERENCE_MM};
@@ -43,6 +46,9 @@ pub struct Answer {
     pub timing: Vec<String>,
     /// Where.
     pub elevation: Option<String>,
+    /// What each band loses or gains, where the snow line lies, what snow is at risk, and what decides it at which elevation.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub elevations: Vec<String>,
     /// What it means for the volume of the melt season.
     pub volumes: Option<String>,
     /// How much more precipitation would make up for it.
@@ -59,6 +65,9 @@ pub struct Answer {
     /// What single years say: variance, low-snow odds, worst years, runs, tails, detection.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     pub years: Vec<String>,
+    /// How often years are dry and warm, what that does to the snow, and kinds of snow drought.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub dry_and_warm: Vec<String>,
     /// Could chance hide it?
     pub chances: Vec<String>,
 }
@@ -72,35 +81,22 @@ pub struct Asked {
     pub answer: Vec<String>,
 }
 
-/// Whether the study states a change of precipitation with its levels.
-fn changes_precipitation(findings: &Findings, warming: &Warming) -> bool {
-    let is_stated =
-        |level_c: &f64| warming.precipitation.factor(*level_c).iter().any(|factor| *factor != 1.0);
-    let wet_days_change = warming.wet_day_intensity_pct_per_c.is_some_and(|pct_per_c| pct_per_c != 0.0);
-    wet_days_change || findings.levels_c.iter().any(is_stated)
-}
-
-/// What a shift comes of: `warming`, or that with the change of precipitation that the study states for its levels.
-fn cause(findings: &Findings, warming: &Warming) -> &'static str {
-    if changes_precipitation(findings, warming) {
-        "warming with its stated change of precipitation"
-    } else {
-        "warming"
-    }
-}
-
 /// Puts the findings into a reader's words.
 pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -> Answer {
     let Some(headline) = findings.basin.first() else {
         return Answer { verdict: "Nothing was measured.".to_owned(), ..Answer::default() };
     };
-    let verdict = verdict::verdict(findings, headline, cause(findings, warming), reader);
+    let changes_precipitation = warming.changes_precipitation(&findings.levels_c);
+    let cause = cause(changes_precipitation);
+    let on_top = if changes_precipitation { " on top of its stated change" } else { "" };
+    let verdict = verdict::verdict(findings, headline, cause, reader);
+    let dry_and_warm = dry_and_warm::dry_and_warm(findings, reader);
+    let elevations = elevations::elevations(findings, reader);
     if is_scarce(headline) {
-        return Answer { verdict, ..Answer::default() };
+        return Answer { verdict, dry_and_warm, elevations, ..Answer::default() };
     }
     let levels = || headline.levels.iter();
     let changed = |level: &&LevelFindings| level.shift.is_some();
-    let on_top = if changes_precipitation(findings, warming) { " on top of its stated change" } else { "" };
     let mut answer = Answer {
         at_a_glance: Vec::new(),
         verdict,
@@ -108,23 +104,26 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
             .filter(changed)
             .map(|level| verdict::how_much(findings, headline, level, reader))
             .collect(),
-        yardstick: yardstick::yardstick(findings, headline, reader),
+        yardstick: yardstick::yardstick(findings, headline, cause, reader),
         how_sure: how_sure::how_sure(findings, headline, reader),
         parameters: parameters::parameters(findings, headline, reader),
         timing: (0..findings.levels_c.len()).filter_map(|at| place::timing(findings, at, reader)).collect(),
         elevation: place::elevation(findings, reader),
+        elevations,
         volumes: volumes::volumes(findings, reader),
         break_even: break_even::break_even(findings, headline, on_top, reader),
         slopes: slopes::slopes(findings, reader),
         cases: slopes::cases(findings, reader),
-        tipping: tipping::tipping(findings, cause(findings, warming), reader),
-        years: years::years(findings, cause(findings, warming), reader)
+        tipping: tipping::tipping(findings, cause, reader),
+        years: years::years(findings, cause, reader)
             .into_iter()
             .chain(record_odds::record_odds(findings, reader))
             .collect(),
+        dry_and_warm,
         chances: levels().filter_map(|level| chance::could_be_hidden(findings, level, reader)).collect(),
     };
-    answer.at_a_glance = at_a_glance(findings, headline, &answer, on_top, reader);
+    let by_averaging_period = years::by_averaging_period(findings, cause, reader);
+    answer.at_a_glance = at_a_glance(findings, headline, (&answer, by_averaging_period), on_top, reader);
     answer
 }
 
@@ -132,7 +131,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
 fn at_a_glance(
     findings: &Findings,
     headline: &MeasureFindings,
-    answer: &Answer,
+    (answer, by_averaging_period): (&Answer, Option<String>),
     on_top: &str,
     reader: Reader,
 ) -> Vec<Asked> {
@@ -147,6 +146,7 @@ fn at_a_glance(
     let asked = [
         ("How much?", how_much.chain(answer.elevation.clone()).collect()),
         ("Against which yardstick?", yardsticks.into_iter().flatten().cloned().collect()),
+        ("In single years, or only in long means?", by_averaging_period.into_iter().collect()),
         ("How sure is it?", answer.how_sure.clone()),
         ("Does it hang on the parameters?", answer.parameters.iter().skip(1).take(2).cloned().collect()),
         ("How much water is that?", answer.volumes.iter().cloned().collect()),

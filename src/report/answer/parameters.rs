@@ -3,7 +3,7 @@
 use super::super::numbers::{counted, fixed, signed};
 use super::super::reader::Reader;
 use super::{period_name, telling_level};
-use crate::findings::{Findings, LevelBySet, MeasureFindings, Mover};
+use crate::findings::{AveragedShares, Findings, LevelBySet, MeasureFindings, Mover, ThreeWayShares};
 
 /// The sentences; none where no sets of parameters were run.
 pub(super) fn parameters(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> Vec<String> {
@@ -25,17 +25,36 @@ pub(super) fn parameters(findings: &Findings, headline: &MeasureFindings, reader
         words.push(whichever_set(level, reader));
         words.extend(weighed(level, &headline.measure.title, reader));
         words.extend(level.variance_shares.map(|shares| {
-            let [level_pct, realization, set, together] =
-                [shares.level, shares.realization, shares.set, shares.remainder].map(|share| fixed(100.0 * share, 0));
+            let [level_pct, realization, set, together] = in_percent(shares);
             format!(
                 "Of the variance of all these runs at the reference and at {}, the warming makes {level_pct} %, the realization {realization} %, the set \
                  of parameters {set} %, and what they do only together {together} %.",
                 reader.level(level.level_c)
             )
         }));
+        words.extend(by_averaging(level));
     }
     words.extend(overturned(&found.levels, reader));
     words
+}
+
+/// Level, chance, set, and what they do only together.
+fn in_percent(shares: ThreeWayShares) -> [String; 4] {
+    [shares.level, shares.realization, shares.set, shares.remainder].map(|share| fixed(100.0 * share, 0))
+}
+
+/// How the shares change from single years to the longest means.
+fn by_averaging(level: &LevelBySet) -> Option<String> {
+    let [first, .., last] = level.averaged_shares.as_slice() else { return None };
+    let said = |of: &AveragedShares| {
+        let [level_pct, chance, set, _] = in_percent(of.shares);
+        let what = match of.years {
+            1 => "single years".to_owned(),
+            years => format!("{years}-year means"),
+        };
+        format!("{what} the warming makes {level_pct} %, chance {chance} % and the set {set} %")
+    };
+    Some(format!("By averaging period: in {}; in {}.", said(first), said(last)))
 }
 
 /// The change, whichever set is right.

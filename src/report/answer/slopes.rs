@@ -54,7 +54,7 @@ fn offset(of: &Offset, surface: &ResponseSurface, title: &str, reader: Reader) -
                 format!(" (Monte Carlo, 5–95 %: {} to {})", end(range.q05_c), end(range.q95_c))
             });
             Some(format!(
-                "{more} makes up for a warming to about {}{range}: there the median {title} is the reference's.",
+                "{more} makes up for about {} of warming{range}: there the median {title} is the reference's.",
                 reader.between_levels(level_c)
             ))
         }

@@ -3,7 +3,7 @@
 use super::super::numbers::{fixed, signed};
 use super::super::reader::Reader;
 use super::{is_scarce, period_name};
-use crate::findings::{Crossing, CrossingRange, Findings, LevelFindings, MeasureFindings};
+use crate::findings::{CrossingRange, Findings, Judged, LevelFindings, MeasureFindings, judged};
 
 /// A 5-95 % range of fewer pairs is their extremes.
 const LEAST_PAIRS_FOR_A_RANGE: usize = 20;
@@ -25,8 +25,8 @@ pub(super) fn verdict(
             reader.amount(spread.q50)
         );
     }
-    match headline.outweighs {
-        Crossing::At { level_c, until_c } => {
+    match judged(headline.outweighs, headline.outweighs_range) {
+        Judged::Outweighs { level_c, until_c } => {
             let range = crossing_range(findings, headline.outweighs_range, reader);
             let from = reader.between_levels(level_c);
             let (span, elsewhere) = match until_c {
@@ -41,33 +41,51 @@ pub(super) fn verdict(
                  the {cause}."
             )
         }
-        Crossing::NotReached { up_to_c } => {
-            let ratio = headline.levels.last().and_then(|level| level.signal_to_spread);
-            let ratio = ratio.map_or(String::new(), |ratio| {
-                let ratio = fixed(ratio.value, 2);
-                format!(": at {} the shift is {ratio} times the half spread", reader.level(up_to_c))
-            });
-            // Other realizations would have it cross: that is no answer.
-            let may_cross_c = headline.outweighs_range.and_then(|range| range.q05_c);
-            if let Some(from_c) = may_cross_c {
-                return format!(
-                    "Up to {} these realizations cannot tell whether {cause} outweighs the precipitation spread of the {name}{ratio}; \
-                     others of the same kind might have it outweigh from about {} on.",
-                    reader.level(up_to_c),
-                    reader.between_levels(from_c)
-                );
+        Judged::DoesNot { up_to_c } => format!(
+            "Up to {}, {cause} does not outweigh the precipitation spread of the {name}; precipitation outweighs the \
+             {cause}{}.",
+            reader.level(up_to_c),
+            highest_ratio(headline, reader)
+        ),
+        Judged::CannotTell { crosses_at_c, may_cross_at_c } => {
+            let up_to = findings.levels_c.last().map_or_else(String::new, |level_c| reader.level(*level_c));
+            let cannot = format!(
+                "p to {up_to} these realizations cannot tell whether {cause} outweighs the precipitation spread of the {name}{}",
+                highest_ratio(headline, reader)
+            );
+            let at = |at_c: f64| reader.between_levels(at_c);
+            match (crosses_at_c, may_cross_at_c) {
+                (_, None) => {
+                    format!("U{cannot}; they are too few to say what others of the same kind would tell.")
+                }
+                (None, Some(from_c)) => {
+                    format!(
+                        "U{cannot}; others of the same kind might have it outweigh from about {} on.",
+                        at(from_c)
+                    )
+                }
+                (Some(at_c), Some(from_c)) => format!(
+                    "Below about {} of warming, precipitation outweighs the {cause}. From there u{cannot}; they have it outweigh from \
+                     about {} on, others of the same kind might at no level.",
+                    at(from_c),
+                    at(at_c)
+                ),
             }
-            format!(
-                "Up to {}, {cause} does not outweigh the precipitation spread of the {name}; precipitation outweighs the \
-                 {cause}{ratio}.",
-                reader.level(up_to_c)
-            )
         }
-        Crossing::Unknown => format!(
+        Judged::Unknown => format!(
             "Whether {cause} outweighs the precipitation spread of the {name} cannot be said from this study: there is \
              no level above the reference, too few realizations, or a reference that does not spread."
         ),
     }
+}
+
+/// `: at +4 °C the shift is 0.92 times the half spread`.
+fn highest_ratio(headline: &MeasureFindings, reader: Reader) -> String {
+    let highest = headline.levels.last().and_then(|level| Some((level.level_c, level.signal_to_spread?)));
+    highest.map_or(String::new(), |(level_c, ratio)| {
+        let ratio = fixed(ratio.value, 2);
+        format!(": at {} the shift is {ratio} times the half spread", reader.level(level_c))
+    })
 }
 
 /// ` (Monte Carlo range +1.3 to +1.5)`, where the realizations at hand leave that open.
@@ -104,12 +122,13 @@ pub(super) fn how_much(
     let percent = at.percent_change.map_or(String::new(), |percent| format!(" ({} %)", signed(percent, 0)));
     let ratio = at.signal_to_spread.map_or(String::new(), |ratio| {
         let error = ratio.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
-        let straddles =
-            ratio.monte_carlo_error.is_some_and(|error| (ratio.value - 1.0).abs() < OF_90_PCT * error);
-        let so = match (straddles, ratio.value > 1.0) {
-            (true, _) => "so near 1 that these realizations cannot tell whether it outweighs it",
-            (false, true) => "so it outweighs it",
-            (false, false) => "so it does not outweigh it",
+        let so = match (ratio.monte_carlo_error, ratio.value > 1.0) {
+            (None, _) => "of realizations too few to tell whether it outweighs it",
+            (Some(error), _) if (ratio.value - 1.0).abs() < OF_90_PCT * error => {
+                "so near 1 that these realizations cannot tell whether it outweighs it"
+            }
+            (_, true) => "so it outweighs it",
+            (_, false) => "so it does not outweigh it",
         };
         format!("; that is {}{error} times the half spread, {so}", fixed(ratio.value, 2))
     });

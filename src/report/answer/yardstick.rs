@@ -7,7 +7,12 @@ use crate::findings::{Crossing, Findings, MeasureFindings, Yardstick};
 
 /// The yardstick and the verdict by others: the assumed change of mean precipitation taken away, halved and doubled, other
 /// periods, one standard deviation, temperatures held; and at which levels the verdict hangs on the choice.
-pub(super) fn yardstick(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> Vec<String> {
+pub(super) fn yardstick(
+    findings: &Findings,
+    headline: &MeasureFindings,
+    cause: &str,
+    reader: Reader,
+) -> Vec<String> {
     let Some(spread) = headline.precipitation_spread else {
         return Vec::new();
     };
@@ -36,7 +41,7 @@ pub(super) fn yardstick(findings: &Findings, headline: &MeasureFindings, reader:
             .collect();
         let others = match others.as_slice() {
             [] => String::new(),
-            others => format!(" The warming outweighs {}.", others.join(", ")),
+            others => format!(" The {cause} outweighs {}.", others.join(", ")),
         };
         format!(
             "It holds an assumed change of mean precipitation, normal with a standard deviation of {} %: an assumption \
@@ -74,7 +79,7 @@ pub(super) fn yardstick(findings: &Findings, headline: &MeasureFindings, reader:
             from_where_on(held.outweighs, reader)
         ));
     }
-    words.extend(hangs(findings, headline, reader));
+    words.extend(hangs(findings, headline, cause, reader));
     words
 }
 
@@ -104,7 +109,7 @@ fn from_where_on(crossing: Crossing, reader: Reader) -> String {
 }
 
 /// At which warmer levels every yardstick of the study's own periods agrees, and at which the verdict hangs on the choice.
-fn hangs(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> Option<String> {
+fn hangs(findings: &Findings, headline: &MeasureFindings, cause: &str, reader: Reader) -> Option<String> {
     let warmer = &findings.levels_c[findings.reference + 1..];
     let verdicts = |level_c: f64| -> Vec<bool> {
         let own = headline.yardsticks.iter().filter(|of| of.years == findings.years);
@@ -133,8 +138,9 @@ fn hangs(findings: &Findings, headline: &MeasureFindings, reader: Reader) -> Opt
         [one] => one.clone(),
         [rest @ .., last] => format!("{} and {last}", rest.join(", ")),
     };
+    let outweighs = format!("{cause} outweighs at");
     let parts = [
-        (&all, "warming outweighs at"),
+        (&all, outweighs.as_str()),
         (&none, "precipitation outweighs at"),
         (&some, "the verdict hangs on the yardstick at"),
     ];

@@ -14,11 +14,10 @@ pub(super) fn years(findings: &Findings, cause: &str, reader: Reader) -> Vec<Str
     };
     let headline = by_year.measures.first();
     let mut said: Vec<String> = Vec::new();
-    said.extend(
-        headline.map(|of| of.partitions.as_slice()).and_then(|of| holds_most(of, findings, cause, reader)),
-    );
+    said.extend(by_averaging_period(findings, cause, reader));
     said.extend(by_year.low_snow.as_ref().and_then(|low| low_snow(low, findings, reader)));
-    said.extend(by_year.low_snow.as_ref().and_then(|low| without_warming(low, reader)));
+    said.extend(by_year.low_snow.as_ref().and_then(|low| own_share(low, by_year, findings)));
+    said.extend(by_year.low_snow.as_ref().and_then(|low| without_warming(low, cause, reader)));
     said.extend(by_year.worst_years.first().and_then(|worst| worst_year(worst, by_year, findings, reader)));
     said.extend(by_year.low_runs.as_ref().and_then(|runs| low_runs(runs, findings, reader)));
     said.extend(headline.and_then(|of| tails(of, findings, reader)));
@@ -27,7 +26,13 @@ pub(super) fn years(findings: &Findings, cause: &str, reader: Reader) -> Vec<Str
     said
 }
 
-/// From which averaging period on the warming holds the largest share, levels of one answer together.
+/// Whether the headline's warming holds more than chance in single years, or only in means over many.
+pub(super) fn by_averaging_period(findings: &Findings, cause: &str, reader: Reader) -> Option<String> {
+    let headline = findings.by_year.as_ref()?.measures.first()?;
+    holds_most(&headline.partitions, findings, cause, reader)
+}
+
+/// From which averaging period on the warming holds the largest share of the three that are named, levels of one answer together.
 fn holds_most(partitions: &[Partition], findings: &Findings, cause: &str, reader: Reader) -> Option<String> {
     let reference_c = findings.levels_c[findings.reference];
     let mut groups: Vec<(HoldsMost, Vec<String>)> = Vec::new();
@@ -54,7 +59,8 @@ fn holds_most(partitions: &[Partition], findings: &Findings, cause: &str, reader
     let groups: Vec<String> = groups.iter().map(said).collect();
     (!groups.is_empty()).then(|| {
         format!(
-            "Of all that makes years, or means over several, differ, the {cause} holds the largest share {}.",
+            "Years, and means over several, differ by the {cause}, by chance, and by how differently they take it: of these three \
+             the {cause} holds the largest share {}.",
             groups.join("; ")
         )
     })
@@ -90,32 +96,56 @@ fn low_snow(low: &LowSnow, findings: &Findings, reader: Reader) -> Option<String
     ))
 }
 
+/// The reference's own share of low years, where it is not the quantile, and why.
+fn own_share(low: &LowSnow, by_year: &ByYear, findings: &Findings) -> Option<String> {
+    let own = low.levels.get(findings.reference).filter(|_| low.share_differs_from_quantile)?.chance;
+    let why = if by_year.redraws_years { ", since the record's winters come again and again" } else { "" };
+    Some(format!(
+        "At the reference itself {} %{} of the years are low, not {} %: {} % of them have just the limit's SWE{why}, and only years \
+         below it count.",
+        fixed(100.0 * own.value, 1),
+        range(own, 100.0, 1, " %"),
+        trimmed(&fixed(100.0 * low.below_quantile, 1)),
+        fixed(100.0 * low.years_at_limit as f64 / low.years as f64, 1)
+    ))
+}
+
 /// The record's climate against one without so much warming: a sensitivity of the model.
-fn without_warming(low: &LowSnow, reader: Reader) -> Option<String> {
+fn without_warming(low: &LowSnow, cause: &str, reader: Reader) -> Option<String> {
     let of = low.without_warming.first()?;
-    let warming = reader.difference(of.level_c.abs());
+    let warming = format!("{} of {cause}", reader.difference(of.level_c.abs()));
     Some(match of.chance_ratio {
         Some(ratio) if ratio.q05.is_none() || ratio.q95.is_none() => format!(
-            "Without {warming} of warming so few simulated years are low that it cannot be told how much more often the record's \
+            "Without {warming} so few simulated years are low that it cannot be told how much more often the record's \
              own climate has them."
         ),
         Some(ratio) if ratio.side_of(1.0).is_none() => format!(
-            "In this model, the record's own climate has low-snow years {} times as often{} as the same weather without {warming} \
-             of warming: too near to tell.",
+            "In this model, the record's own climate has low-snow years {} times as often{} as the same weather without \
+             {warming}: too near to tell.",
             fixed(ratio.value, 1),
             range(ratio, 1.0, 1, "")
         ),
         Some(ratio) => format!(
-            "In this model, the record's own climate has low-snow years {} times as often{} as the same weather without {warming} \
-             of warming: how much the odds move, not what caused any year.",
+            "In this model, the record's own climate has low-snow years {} times as often{} as the same weather without \
+             {warming}{}: how much the odds move, not what caused any year.",
             fixed(ratio.value, 1),
-            range(ratio, 1.0, 1, "")
+            range(ratio, 1.0, 1, ""),
+            of.attributable_fraction.map_or_else(String::new, on_top)
         ),
         None => format!(
-            "Without {warming} of warming no simulated year is low: how much more often the record's own climate \
+            "Without {warming} no simulated year is low: how much more often the record's own climate \
              has them cannot be told."
         ),
     })
+}
+
+/// The low years that come on top, of all low ones.
+fn on_top(fraction: Ranged) -> String {
+    format!(
+        ", so that {} %{} of them come on top (a sensitivity, not a formal attribution)",
+        fixed(100.0 * fraction.value, 0),
+        range(fraction, 100.0, 0, " %")
+    )
 }
 
 fn worst_year(worst: &WorstYear, by_year: &ByYear, findings: &Findings, reader: Reader) -> Option<String> {
@@ -131,13 +161,27 @@ fn worst_year(worst: &WorstYear, by_year: &ByYear, findings: &Findings, reader: 
             None => format!("rarer than one in {simulated} simulated years"),
         })
     };
+    let rests_on = match (by_year.redraws_years, by_year.changes_mean) {
+        (true, false) => {
+            " The realizations are the record's own winters in another order: at the reference this rests on those very winters, and says \
+             little more than that count."
+        }
+        (true, true) => {
+            " The realizations are the record's own winters in another order, wetter or drier by the assumed change of mean precipitation: at \
+             the reference this rests on those very winters and on that assumption, and says little more than that count."
+        }
+        (false, _) => "",
+    };
     Some(format!(
-        "As little as in {}, the record's lowest year in this model ({}), comes {} at the reference, {} at {}.",
+        "As little as in {}, the record's lowest year in this model ({}), comes {} at the reference, {} at {}; in the record itself it \
+         is {} in {}.{rests_on}",
         worst.water_year,
         reader.amount(worst.swe_mm),
         said(reference)?,
         said(at)?,
-        reader.level(at?.level_c)
+        reader.level(at?.level_c),
+        worst.record_years_as_low,
+        worst.record_years
     ))
 }
 
@@ -272,7 +316,9 @@ pub fn in_years(chance: f64) -> String {
 pub fn range(of: Ranged, times: f64, decimals: usize, unit: &str) -> String {
     match (of.q05, of.q95) {
         (Some(low), Some(high)) => {
-            format!(" ({} to {}{unit})", fixed(times * low, decimals), fixed(times * high, decimals))
+            let [value, low, high] = [of.value, low, high].map(|number| fixed(times * number, decimals));
+            // All the same once rounded: a range would say no more than the number.
+            if low == value && high == value { String::new() } else { format!(" ({low} to {high}{unit})") }
         }
         _ => String::new(),
     }

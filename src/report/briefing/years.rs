@@ -5,7 +5,7 @@ use super::super::numbers::{DASH, fixed, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
 use super::{Figures, levels};
-use crate::figures::Part;
+use crate::figures::{Part, cause};
 use crate::findings::{
     ByYear, Crossing, Detection, Findings, HoldsMost, LowRuns, LowSnow, MeasureByYear, Partition, Ranged,
     TYPES, Tails,
@@ -23,7 +23,7 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer, figures: &Figures<'_>)
         (worst_years(findings, found, reader))
         @if let Some(runs) = &found.low_runs { (low_runs(findings, runs, reader)) }
         @for measure in found.measures.iter().take(1) {
-            (partitions(measure, reader))
+            (partitions(measure, cause(found.levels_change_precipitation), reader))
             @if let Some(detection) = &measure.detection { (detected(detection, reader)) }
         }
         details {
@@ -111,11 +111,19 @@ fn worst_years(findings: &Findings, found: &ByYear, reader: Reader) -> Markup {
     html! { @if !found.worst_years.is_empty() { div.scroll { table {
         caption {
             "The record's years with least SWE: one simulated year in so many has as little or less, with its 5–95 % range. No number goes beyond the "
-            (fixed(found.simulated_years as f64, 0)) " simulated years of a level."
+            (fixed(found.simulated_years as f64, 0)) " simulated years of a level. Beside it how many of the record's own years have as little or less."
+            @if found.redraws_years {
+                " The realizations are the record's own winters in another order, so that at the reference the simulated number says little more."
+            }
         }
-        (heading(findings, "Year of the record", reader))
+        thead { tr {
+            th scope="col" { "Year of the record" }
+            th scope="col" { "In the record" }
+            @for name in levels::names(findings, reader) { th scope="col" { (name) } }
+        } }
         tbody { @for year in &found.worst_years { tr {
             th scope="row" { (year.water_year) ", " (reader.amount(year.swe_mm)) }
+            td { (year.record_years_as_low) " in " (year.record_years) }
             @for level in &year.levels { td { @match level.return_period_years {
                 Some(period) => {
                     "1 in " (years_of(period.value))
@@ -143,7 +151,7 @@ fn low_runs(findings: &Findings, runs: &LowRuns, reader: Reader) -> Markup {
     } } }
 }
 
-fn partitions(measure: &MeasureByYear, reader: Reader) -> Markup {
+fn partitions(measure: &MeasureByYear, cause: &str, reader: Reader) -> Markup {
     let holds = |of: &Partition| match of.warming_holds_most {
         HoldsMost::Always => "always".to_owned(),
         HoldsMost::From { years, .. } => format!("from {years}-year means on"),
@@ -155,10 +163,12 @@ fn partitions(measure: &MeasureByYear, reader: Reader) -> Markup {
     html! { @if !measure.partitions.is_empty() { div.scroll { table {
         caption {
             "Shares of the variance of the " (measure.measure.title) " at the reference and one level, of single years and of means over more. They add up \
-             to 100 %. Where a realization holds a single period, the period's chance counts with the realization's."
+             to 100 %. Where a realization holds a single period, the period's chance counts with the realization's. The " (cause) " is largest \
+             where it holds more than chance as a whole (realization and year together), and more than how differently they take it (both \
+             columns by level together)."
         }
         thead { tr { @for name in [
-            "Level", "Years averaged", "Warming", "Realization", "Warming by realization", "Year", "Warming by year", "Warming is largest",
+            "Level", "Years averaged", "Level's share", "Realization", "Realization by level", "Year", "Year by level", "Level is largest",
         ] { th scope="col" { (name) } } } }
         tbody { @for of in &measure.partitions { @for (row, period) in of.periods.iter().enumerate() { tr {
             th scope="row" { (reader.level(of.level_c)) }

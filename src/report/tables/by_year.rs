@@ -51,12 +51,16 @@ fn texts<const N: usize>(names: [&str; N]) -> Vec<String> {
     names.map(str::to_owned).into()
 }
 
-/// One row a measure, level and averaging period; the shares of one row add up to 1.
+/// One row a measure, level and averaging period; the five parts of one row add up to 1, and so do level, chance (realization
+/// and year) and interaction (both by level), which are what the warming is held against.
 fn partitions(found: &ByYear, units: UnitSystem) -> Vec<u8> {
     let warming = units.warming();
     let mut header = vec!["measure".to_owned(), format!("level_{}", warming.suffix)];
     header.extend(texts(["averaged_years", "periods_per_realization", "years_left_over"]));
     for share in ["level", "realization", "level_by_realization", "year", "level_by_year"] {
+        header.extend(columns(&format!("share_{share}")));
+    }
+    for share in ["chance", "interaction"] {
         header.extend(columns(&format!("share_{share}")));
     }
     header.extend(columns("level_less_largest_other"));
@@ -79,6 +83,8 @@ fn partitions(found: &ByYear, units: UnitSystem) -> Vec<u8> {
                 row.extend(ranged(Some(period.level_by_realization)));
                 row.extend(ranged(period.year));
                 row.extend(ranged(period.level_by_year));
+                row.extend(ranged(Some(period.chance)));
+                row.extend(ranged(Some(period.interaction)));
                 row.extend(ranged(Some(period.level_less_largest_other)));
                 row.push(word.to_owned());
                 row.push(from.map_or(String::new(), |years| years.to_string()));
@@ -193,6 +199,8 @@ fn low_snow(found: &ByYear, units: UnitSystem) -> Vec<u8> {
     header.push("chance_bound".to_owned());
     header.extend(columns("chance_ratio_to_reference"));
     header.extend(columns("chance_ratio_of_record_climate_to_level"));
+    header.extend(columns("attributable_fraction_of_record_climate"));
+    header.push("reference_years_at_limit".to_owned());
     let rows = found.low_snow.iter().flat_map(|low| {
         low.levels.iter().map(move |level| {
             let colder = low.without_warming.iter().find(|of| of.level_c == level.level_c);
@@ -203,6 +211,8 @@ fn low_snow(found: &ByYear, units: UnitSystem) -> Vec<u8> {
             row.push(optional(level.bound));
             row.extend(ranged(Some(level.chance_ratio)));
             row.extend(ranged(colder.and_then(|of| of.chance_ratio)));
+            row.extend(ranged(colder.and_then(|of| of.attributable_fraction)));
+            row.push(low.years_at_limit.to_string());
             row
         })
     });
@@ -245,7 +255,7 @@ fn worst_years(found: &ByYear, units: UnitSystem) -> Vec<u8> {
     let (warming, depth) = (units.warming(), units.depth());
     let mut header = vec!["water_year".to_owned(), format!("swe_{}", depth.suffix)];
     header.push(format!("level_{}", warming.suffix));
-    header.extend(texts(["years_as_low", "simulated_years"]));
+    header.extend(texts(["record_years_as_low", "record_years", "years_as_low", "simulated_years"]));
     header.extend(columns("chance"));
     header.push("chance_bound".to_owned());
     header.extend(columns("return_period_years"));
@@ -253,7 +263,9 @@ fn worst_years(found: &ByYear, units: UnitSystem) -> Vec<u8> {
         year.levels.iter().map(move |level| {
             let mut row = vec![year.water_year.to_string(), depth.of(year.swe_mm).to_string()];
             row.push(warming.of(level.level_c).to_string());
-            row.extend([level.years_as_low, found.simulated_years].map(|count| count.to_string()));
+            let counts =
+                [year.record_years_as_low, year.record_years, level.years_as_low, found.simulated_years];
+            row.extend(counts.map(|count| count.to_string()));
             row.extend(ranged(Some(level.chance)));
             row.push(optional(level.bound));
             row.extend(ranged(level.return_period_years));

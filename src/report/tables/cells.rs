@@ -1,6 +1,6 @@
 //! Cells: a number in the reader's units, empty where there is none, and the names of columns' units.
 
-use crate::findings::{Chance, Crossing, Distribution, Estimate, Range};
+use crate::findings::{Chance, Crossing, CrossingRange, Distribution, Estimate, Range};
 use crate::season::{Kind, Measure, Outcome};
 use crate::units::UnitSystem;
 use csv::Writer;
@@ -102,6 +102,12 @@ pub(super) fn outweighs(crossing: Crossing, units: UnitSystem) -> [String; 3] {
     };
     let [from, until] = [from_c, until_c].map(|at_c| optional(at_c.map(|at_c| units.warming().of(at_c))));
     [word.to_owned(), from, until]
+}
+
+/// The ends of a crossing's range; empty where it is not known, or not reached.
+pub(super) fn crossing_range(range: Option<CrossingRange>, units: UnitSystem) -> [String; 2] {
+    [range.and_then(|range| range.q05_c), range.and_then(|range| range.q95_c)]
+        .map(|end_c| optional(end_c.map(|end_c| units.warming().of(end_c))))
 }
 
 /// Writing to memory cannot fail.

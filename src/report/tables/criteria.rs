@@ -1,6 +1,6 @@
 //! What the user wants to hold, level by level, and from which warming on it fails.
 
-use super::cells::{estimate, finish, optional, write, yes_or_no};
+use super::cells::{crossing_range, estimate, finish, optional, write, yes_or_no};
 use crate::findings::{Asks, Crossing, TippingLevel};
 use crate::units::UnitSystem;
 use csv::Writer;
@@ -16,7 +16,7 @@ pub(super) fn criteria(found: &[TippingLevel], units: UnitSystem) -> Vec<u8> {
         "limit".to_owned(),
         format!("level_{degree}"),
         "value".to_owned(),
-        "value_error".to_owned(),
+        "value_monte_carlo_error".to_owned(),
         "holds".to_owned(),
         "fails".to_owned(),
         format!("fails_from_{degree}"),
@@ -38,7 +38,6 @@ pub(super) fn criteria(found: &[TippingLevel], units: UnitSystem) -> Vec<u8> {
             Crossing::NotReached { .. } => ("not reached", None),
             Crossing::Unknown => ("unknown", None),
         };
-        let in_units = |at_c: Option<f64>| optional(at_c.map(|at_c| units.warming().of(at_c)));
         let range = of.fails_range.filter(|_| of.holds_at_reference == Some(true));
         for level in &of.levels {
             let mut row =
@@ -50,9 +49,8 @@ pub(super) fn criteria(found: &[TippingLevel], units: UnitSystem) -> Vec<u8> {
             })));
             row.push(yes_or_no(level.holds));
             row.push(word.to_owned());
-            row.push(in_units(from_c));
-            row.push(in_units(range.and_then(|range| range.q05_c)));
-            row.push(in_units(range.and_then(|range| range.q95_c)));
+            row.push(optional(from_c.map(|from_c| units.warming().of(from_c))));
+            row.extend(crossing_range(range, units));
             write(&mut writer, &row);
         }
     }

@@ -16,6 +16,7 @@ pub(super) fn dry_and_warm(found: &Coincidence, units: UnitSystem) -> Vec<u8> {
     header.extend(of_estimate("dependence"));
     header.extend(of_estimate("own_medians_dependence"));
     header.push("own_medians_depends".to_owned());
+    header.push("low_snow_below_quantile".to_owned());
     header.extend(of_chance("low_snow_given_dry_warm"));
     header.extend(of_chance("low_snow_given_dry_cool"));
     header.extend(of_estimate("low_snow_ratio"));
@@ -40,6 +41,7 @@ pub(super) fn dry_and_warm(found: &Coincidence, units: UnitSystem) -> Vec<u8> {
             Depends::CannotTell => "cannot tell",
         };
         row.push(depends.to_owned());
+        row.push(found.low_snow_below_quantile.to_string());
         row.extend(chance(level.low_snow_given_dry.warm));
         row.extend(chance(level.low_snow_given_dry.cool));
         row.extend(estimate(level.low_snow_given_dry.ratio));
@@ -72,6 +74,7 @@ pub(super) fn dry_and_warm_record(found: &RecordCoincidence) -> Vec<u8> {
         "share_dry_warm_wilson_high",
         "dependence",
         "fisher_p",
+        "low_snow_below_quantile",
         "low_snow_given_dry_warm",
         "low_snow_given_dry_warm_wilson_low",
         "low_snow_given_dry_warm_wilson_high",
@@ -91,6 +94,7 @@ pub(super) fn dry_and_warm_record(found: &RecordCoincidence) -> Vec<u8> {
     );
     row.extend(counted(found.dry_warm));
     row.extend([found.dependence, found.fisher_p].map(optional));
+    row.push(found.low_snow_below_quantile.to_string());
     row.extend(counted(found.low_snow_given_dry_warm));
     row.extend(counted(found.low_snow_given_dry_cool));
     row.push(optional(found.low_snow_ratio));
@@ -103,7 +107,7 @@ pub(super) fn dry_and_warm_record(found: &RecordCoincidence) -> Vec<u8> {
             let counts = [years.dry_warm, years.dry_cool, years.wet_warm, years.wet_cool];
             row.extend(counts.map(|count| count.to_string()));
             row.extend(counted(period.dry_warm));
-            row.extend(blank(9));
+            row.extend(blank(10));
             row
         };
         let mut earlier = of("earlier", periods.earlier);

@@ -1,6 +1,6 @@
 //! Where things lie: the snow line, the elevation of freezing and the crossover, what decides each elevation, and snow at risk.
 
-use super::cells::{finish, optional, write};
+use super::cells::{finish, optional, range, write};
 use crate::findings::{AtRisk, Crossover, Dominates, Findings, Line, LineRange, Places};
 use crate::units::UnitSystem;
 use csv::Writer;
@@ -16,7 +16,11 @@ pub(super) fn snow_lines(places: &Places, units: UnitSystem) -> Vec<u8> {
         format!("snow_line_{m}"),
         format!("snow_line_q05_{m}"),
         format!("snow_line_q95_{m}"),
+        format!("snow_line_resampled_q05_{m}"),
+        format!("snow_line_resampled_q95_{m}"),
         format!("snow_line_rise_{m}_per_{c}"),
+        format!("snow_line_rise_resampled_q05_{m}_per_{c}"),
+        format!("snow_line_rise_resampled_q95_{m}_per_{c}"),
         "freezing".to_owned(),
         format!("freezing_{m}"),
         format!("freezing_rise_{m}_per_{c}"),
@@ -32,20 +36,25 @@ pub(super) fn snow_lines(places: &Places, units: UnitSystem) -> Vec<u8> {
         Line::BelowLowestBand => ["below the lowest band".to_owned(), String::new()],
         Line::AboveHighestBand => ["above the highest band".to_owned(), String::new()],
     };
-    let range =
-        |range: LineRange| [range.q05_m, range.q95_m].map(|end| optional(end.map(|m| elevation.of(m))));
+    let range = |range: Option<LineRange>| {
+        let ends = range.map_or([None; 2], |range| [range.q05_m, range.q95_m]);
+        ends.map(|end| optional(end.map(|m| elevation.of(m))))
+    };
     let rise = |m_per_c: Option<f64>| optional(m_per_c.map(|rise| elevation.of(rise) / warming.of(1.0)));
     for (at, level) in places.snow_line.levels.iter().enumerate() {
         let mut row = vec![warming.of(level.level_c).to_string()];
         row.extend(line(level.snow_line));
         row.extend(range(level.snow_line_range));
+        row.extend(range(level.snow_line_resampled));
         row.push(rise(level.snow_line_rise_m_per_c));
+        let rises = level.snow_line_rise_resampled_m_per_c;
+        row.extend([rises.map(|range| range.q05), rises.map(|range| range.q95)].map(rise));
         row.extend(line(level.freezing));
         row.push(rise(level.freezing_rise_m_per_c));
         let crossover = places.crossover.get(at);
         row.extend(decides(crossover.map(|crossover| crossover.found), units));
         let resampled = crossover.and_then(|crossover| crossover.range);
-        row.extend(resampled.map_or_else(Default::default, |resampled| range(resampled.elevation)));
+        row.extend(range(resampled.and_then(|resampled| resampled.elevation)));
         row.push(optional(resampled.map(|resampled| resampled.share_found)));
         write(&mut writer, &row);
     }
@@ -103,12 +112,16 @@ pub(super) fn at_risk_snow(found: &AtRisk, units: UnitSystem) -> Vec<u8> {
         format!("volume_{}", volume.suffix),
         format!("volume_q05_{}", volume.suffix),
         format!("volume_q95_{}", volume.suffix),
+        format!("volume_resampled_q05_{}", volume.suffix),
+        format!("volume_resampled_q95_{}", volume.suffix),
         "volume_share".to_owned(),
+        "volume_share_resampled_q05".to_owned(),
+        "volume_share_resampled_q95".to_owned(),
     ];
     write(&mut writer, &header);
     for level in &found.levels {
         let bands: Vec<String> = level.bands.iter().map(|band| (band + 1).to_string()).collect();
-        let row = [
+        let mut row = vec![
             units.warming().of(level.level_c).to_string(),
             bands.join(" "),
             area.of(level.area_km2).to_string(),
@@ -116,8 +129,10 @@ pub(super) fn at_risk_snow(found: &AtRisk, units: UnitSystem) -> Vec<u8> {
             volume.of(level.volume_hm3).to_string(),
             volume.of(level.volume_range_hm3.q05).to_string(),
             volume.of(level.volume_range_hm3.q95).to_string(),
-            optional(level.volume_share),
         ];
+        row.extend(range(level.volume_resampled_hm3, |hm3| volume.of(hm3)));
+        row.push(optional(level.volume_share));
+        row.extend(range(level.volume_share_resampled, |share| share));
         write(&mut writer, &row);
     }
     finish(writer)

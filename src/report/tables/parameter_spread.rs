@@ -61,6 +61,35 @@ pub(super) fn parameter_spread(spread: &ParameterSpread, units: UnitSystem) -> V
     finish(writer)
 }
 
+/// One row a level and averaging period: how level, chance, set and what they do only together share the variance.
+pub(super) fn variance_with_parameters(spread: &ParameterSpread, units: UnitSystem) -> Vec<u8> {
+    let mut writer = Writer::from_writer(Vec::new());
+    let header = ["measure", "sets", "realizations_of_each", "averaged_years"].map(str::to_owned);
+    let level = format!("level_{}", units.warming().suffix);
+    let shares = ["share_level", "share_chance", "share_set", "share_together"].map(str::to_owned);
+    write(&mut writer, &[header.as_slice(), &[level], shares.as_slice()].concat());
+    for found in &spread.measures {
+        for (level, of) in
+            found.levels.iter().flat_map(|level| level.averaged_shares.iter().map(move |of| (level, of)))
+        {
+            let mut row = vec![
+                name(&found.measure, units),
+                spread.sets.to_string(),
+                spread.realizations.to_string(),
+                of.years.to_string(),
+                units.warming().of(level.level_c).to_string(),
+            ];
+            let shares = of.shares;
+            row.extend(
+                [shares.level, shares.realization, shares.set, shares.remainder]
+                    .map(|share| share.to_string()),
+            );
+            write(&mut writer, &row);
+        }
+    }
+    finish(writer)
+}
+
 fn over_sets(found: Option<OverSets>, told: impl Fn(f64) -> f64) -> [String; 2] {
     let ends = found.map(|found| [found.lowest, found.highest].map(|end| optional(Some(told(end)))));
     ends.unwrap_or_default()

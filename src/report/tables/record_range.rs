@@ -1,6 +1,6 @@
 //! What other records of the same kind would have answered: ranges over resampled records.
 
-use super::cells::{Told, finish, name, range, unit_names, write};
+use super::cells::{Told, crossing_range, finish, name, range, unit_names, write};
 use crate::findings::Findings;
 use crate::units::UnitSystem;
 use csv::Writer;
@@ -21,6 +21,7 @@ pub(super) fn record_range(findings: &Findings, units: UnitSystem) -> Vec<u8> {
     ] {
         header.extend(["q05", "q95"].map(|end| format!("{number}_{end}")));
     }
+    header.extend(["q05", "q95"].map(|end| format!("outweighs_from_{end}_{}", units.warming().suffix)));
     write(&mut writer, &header);
     for found in &findings.basin {
         let Some(of_records) = &found.record_range else { continue };
@@ -45,6 +46,7 @@ pub(super) fn record_range(findings: &Findings, units: UnitSystem) -> Vec<u8> {
             ] {
                 row.extend(range(plain, |number| number));
             }
+            row.extend(crossing_range(of_records.outweighs, units));
             write(&mut writer, &row);
         }
     }

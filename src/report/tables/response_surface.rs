@@ -12,8 +12,11 @@ fn header(surface: &ResponseSurface, first: &[&str], units: UnitSystem) -> Vec<S
     for measure in &surface.measures {
         let name = name(measure, units);
         header.push(name.clone());
-        for more in ["change", "change_error", "change_pct", "change_pct_error"] {
-            header.push(format!("{name}_{more}"));
+        let change = if measure.kind.is_date() { "change_days" } else { "change" };
+        let pct = measure.kind.least_reference().map(|_| "change_pct");
+        for of in std::iter::once(change).chain(pct) {
+            header.push(format!("{name}_{of}"));
+            header.push(format!("{name}_{of}_monte_carlo_error"));
         }
     }
     header.push("realizations".to_owned());
@@ -29,7 +32,9 @@ fn cells(surface: &ResponseSurface, node: &SurfaceNode, units: UnitSystem) -> Ve
         cells.push(told.outcome(found.median));
         cells.push(told.change(found.change.map(|change| change.value)));
         cells.push(told.change(found.change.and_then(|change| change.monte_carlo_error)));
-        cells.extend(estimate(found.change_pct));
+        if measure.kind.least_reference().is_some() {
+            cells.extend(estimate(found.change_pct));
+        }
     }
     cells.push(surface.realizations.to_string());
     cells

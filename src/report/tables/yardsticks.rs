@@ -1,7 +1,7 @@
 //! The same shifts against other spreads: other periods, other assumed changes of mean precipitation, temperatures held.
 
-use super::cells::{Told, estimate, finish, name, optional, outweighs, unit_names, write};
-use crate::findings::{Crossing, Estimate, Findings, MeasureFindings, Spread};
+use super::cells::{Told, crossing_range, estimate, finish, name, optional, outweighs, unit_names, write};
+use crate::findings::{Crossing, CrossingRange, Estimate, Findings, MeasureFindings, Spread};
 use crate::units::UnitSystem;
 use csv::Writer;
 
@@ -16,6 +16,8 @@ struct Against<'a> {
     /// Level, over the half of the 5-95 % range, over one standard deviation.
     levels: Vec<(f64, Option<Estimate>, Option<f64>)>,
     outweighs: Crossing,
+    /// Of the study's own yardstick alone.
+    outweighs_range: Option<CrossingRange>,
     outweighs_standard_deviation: Option<Crossing>,
 }
 
@@ -51,6 +53,7 @@ pub(super) fn yardsticks(findings: &Findings, units: UnitSystem) -> Vec<u8> {
         .map(str::to_owned),
     );
     header.extend(["from", "until"].map(|end| format!("outweighs_{end}_{warming}")));
+    header.extend(["q05", "q95"].map(|end| format!("outweighs_from_{end}_{warming}")));
     header.push("outweighs_standard_deviation".to_owned());
     header.extend(["from", "until"].map(|end| format!("outweighs_standard_deviation_{end}_{warming}")));
     write(&mut writer, &header);
@@ -66,6 +69,7 @@ pub(super) fn yardsticks(findings: &Findings, units: UnitSystem) -> Vec<u8> {
                 row.extend(estimate(ratio));
                 row.push(optional(level.and_then(|(.., deviations)| deviations)));
                 row.extend(outweighs(against.outweighs, units));
+                row.extend(crossing_range(against.outweighs_range, units));
                 row.extend(
                     against
                         .outweighs_standard_deviation
@@ -92,6 +96,9 @@ fn all<'a>(findings: &Findings, found: &'a MeasureFindings) -> Vec<Against<'a>> 
             .map(|at| (at.level_c, at.signal_to_spread, at.signal_to_standard_deviation))
             .collect(),
         outweighs: of.outweighs,
+        outweighs_range: (of.years == findings.years && of.times_assumed == 1.0)
+            .then_some(found.outweighs_range)
+            .flatten(),
         outweighs_standard_deviation: Some(of.outweighs_standard_deviation),
     });
     let studys = found.yardsticks.iter().find(|of| of.times_assumed == 1.0);
@@ -104,6 +111,7 @@ fn all<'a>(findings: &Findings, found: &'a MeasureFindings) -> Vec<Against<'a>> 
         spread: held.spread.as_ref(),
         levels: held.levels.iter().map(|at| (at.level_c, at.signal_to_spread, None)).collect(),
         outweighs: held.outweighs,
+        outweighs_range: None,
         outweighs_standard_deviation: None,
     });
     own.chain(held).collect()
