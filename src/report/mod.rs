@@ -37,4 +37,4 @@ pub use tables::{ReportFile, tables};
 pub use weather::weather_csv;
 
 /// Version of every JSON document we write: a number removed or renamed raises it.
-pub const SCHEMA_VERSION: u32 = 2;
+pub const SCHEMA_VERSION: u32 = 3;

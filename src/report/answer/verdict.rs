@@ -5,8 +5,6 @@ use super::super::reader::Reader;
 use super::{is_scarce, period_name};
 use crate::findings::{CrossingRange, Findings, Judged, LevelFindings, MeasureFindings, judged};
 
-/// A 5-95 % range of fewer pairs is their extremes.
-const LEAST_PAIRS_FOR_A_RANGE: usize = 20;
 /// So many standard errors to either side hold 90 % of a normal distribution.
 const OF_90_PCT: f64 = 1.645;
 
@@ -132,7 +130,7 @@ pub(super) fn how_much(
         };
         format!("; that is {}{error} times the half spread, {so}", fixed(ratio.value, 2))
     });
-    let range = if shift.pairs >= LEAST_PAIRS_FOR_A_RANGE {
+    let range = if shift.has_range() {
         format!(", 90 % of them between {}", reader.change_and_change(shift.q05, shift.q95))
     } else {
         String::new()
