@@ -11,7 +11,7 @@ pub use over_rules::{LevelOverRules, OutweighsOverRules, RangeOverRules, Weight}
 pub use rule::{Rule, retuned};
 pub use tuning::{FACTOR_BOUNDS, Fit, MELT_OUT_TOLERANCE_DAYS, PEAK_TOLERANCE_PCT, Tuned, is_at_bound, tune};
 
-use super::crossing::{Crossing, CrossingRange};
+use super::crossing::{Crossing, CrossingRange, Judged, judged};
 use super::measure::{Asked, MeasureFindings};
 use super::resample::{Estimate, Resamples};
 use super::shift::Shift;
@@ -176,10 +176,9 @@ impl RulePanel {
 }
 
 impl OfRule {
-    /// Whether the shift comes to outweigh the spread in none of these realizations' levels, but might in others of the same kind.
-    pub fn may_outweigh_by_chance(&self) -> bool {
-        let is_not_reached = matches!(self.outweighs, Crossing::NotReached { .. });
-        is_not_reached && self.outweighs_range.is_some_and(|range| range.q05_c.is_some())
+    /// What these realizations and others of the same kind say together.
+    pub fn judged(&self) -> Judged {
+        judged(self.outweighs, self.outweighs_range)
     }
 
     fn of(found: &MeasureFindings, reference: usize) -> Self {

@@ -66,7 +66,7 @@ fn json_documents() {
     let parse = |text: &str| serde_json::from_str::<serde_json::Value>(text).unwrap();
     assert_eq!(parse(&basin.run("study --json").stdout)["exit_status"], 2);
     let done = parse(&basin.run("study scenario.toml --json").stdout);
-    assert_eq!((done["status"].as_str(), done["schema_version"].as_u64()), (Some("done"), Some(2)));
+    assert_eq!((done["status"].as_str(), done["schema_version"].as_u64()), (Some("done"), Some(3)));
     assert!(done["answer"]["verdict"].as_str().unwrap().contains("1 April SWE"));
     let checked = parse(&basin.run("check scenario.toml --json").stdout);
     assert_eq!(checked["water_years_in_use"].as_array().map(Vec::len), Some(3));

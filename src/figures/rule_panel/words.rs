@@ -2,7 +2,7 @@
 
 use super::super::labels::{between_levels, counted, level, sentence, signed};
 use super::FIGURE;
-use crate::findings::{Crossing, MeasureByRule, OfRule, PanelRule, Rule, RulePanel};
+use crate::findings::{Judged, MeasureByRule, OfRule, PanelRule, Rule, RulePanel};
 use crate::units::UnitSystem;
 
 /// Every text of the figure but names of levels.
@@ -106,17 +106,19 @@ fn lines(rule: &PanelRule, found: &OfRule, units: UnitSystem) -> Vec<String> {
         Some((name, replaced)) => vec![name.to_owned(), replaced.trim_end_matches(')').to_owned()],
         None => vec![name],
     };
-    match found.outweighs {
+    match found.judged() {
         _ if !rule.tuned.is_tuned => lines.push("could not be tuned: not shown".to_owned()),
-        Crossing::At { level_c, .. } => {
+        Judged::Outweighs { level_c, .. } => {
             lines.push(format!("outweighs from {} on", between_levels(units, level_c)));
         }
-        Crossing::NotReached { up_to_c } => {
-            // Other realizations would have it cross: that is no answer.
-            let says = if found.may_outweigh_by_chance() { "cannot tell" } else { "does not outweigh" };
-            lines.push(format!("{says} up to {}", level(units, up_to_c)));
+        Judged::DoesNot { up_to_c } => {
+            lines.push(format!("does not outweigh up to {}", level(units, up_to_c)));
         }
-        Crossing::Unknown => {}
+        Judged::CannotTell { crosses_at_c: Some(at_c), .. } => {
+            lines.push(format!("from {}, cannot tell", between_levels(units, at_c)));
+        }
+        Judged::CannotTell { crosses_at_c: None, .. } => lines.push("cannot tell".to_owned()),
+        Judged::Unknown => {}
     }
     lines
 }
@@ -182,8 +184,12 @@ fn verdict(panel: &RulePanel, measure: &MeasureByRule, units: UnitSystem) -> Str
             };
             format!("it outweighs the precipitation spread from {from} on under {under}")
         }
-        None if outweighs.not_reached.len() == rules => {
+        None if outweighs.does_not.len() == rules => {
             format!("it outweighs the precipitation spread under none of {rules} rules")
+        }
+        None if outweighs.does_not.is_empty() => {
+            "whether it outweighs the precipitation spread these realizations cannot tell under any rule"
+                .to_owned()
         }
         None => "no two rules say the opposite of each other".to_owned(),
     }

@@ -1,6 +1,6 @@
 //! What rules say together: ranges over those that were tuned, and which of them say what.
 
-use super::super::crossing::Crossing;
+use super::super::crossing::Judged;
 use super::super::quantile::sorted;
 use super::super::resample::Estimate;
 use super::{LevelOfRule, OfRule};
@@ -40,7 +40,9 @@ pub struct OutweighsOverRules {
     /// The range over the rules under which it does, degC, the others named as those without; none where there is none.
     pub range_c: Option<RangeOverRules>,
     /// Places of the rules under which it does not up to the highest level.
-    pub not_reached: Vec<usize>,
+    pub does_not: Vec<usize>,
+    /// Places of the rules under which other realizations might say otherwise than these.
+    pub cannot_tell: Vec<usize>,
     /// Places of the rules that cannot be asked.
     pub unknown: Vec<usize>,
 }
@@ -99,17 +101,18 @@ impl RangeOverRules {
 impl OutweighsOverRules {
     pub(super) fn of(rules: &[OfRule], is_tuned: &[bool]) -> Self {
         let tuned = places(is_tuned);
-        let told = |is_told: fn(&Crossing) -> bool| -> Vec<usize> {
-            tuned.iter().copied().filter(|rule| is_told(&rules[*rule].outweighs)).collect()
+        let told = |is_told: fn(Judged) -> bool| -> Vec<usize> {
+            tuned.iter().copied().filter(|rule| is_told(rules[*rule].judged())).collect()
         };
-        let from = |rule: &usize| match rules[*rule].outweighs {
-            Crossing::At { level_c, .. } => (*rule, Some(level_c)),
-            Crossing::NotReached { .. } | Crossing::Unknown => (*rule, None),
+        let from = |rule: &usize| match rules[*rule].judged() {
+            Judged::Outweighs { level_c, .. } => (*rule, Some(level_c)),
+            Judged::DoesNot { .. } | Judged::CannotTell { .. } | Judged::Unknown => (*rule, None),
         };
         Self {
             range_c: RangeOverRules::of(tuned.iter().map(from)),
-            not_reached: told(|crossing| matches!(crossing, Crossing::NotReached { .. })),
-            unknown: told(|crossing| matches!(crossing, Crossing::Unknown)),
+            does_not: told(|judged| matches!(judged, Judged::DoesNot { .. })),
+            cannot_tell: told(|judged| matches!(judged, Judged::CannotTell { .. })),
+            unknown: told(|judged| judged == Judged::Unknown),
         }
     }
 }
@@ -157,14 +160,16 @@ fn places(is_tuned: &[bool]) -> Vec<usize> {
 
 #[cfg(test)]
 mod tests {
+    use super::super::super::crossing::{Crossing, CrossingRange};
     use super::super::super::shift::Shift;
     use super::*;
 
     /// A ratio and its error, if it has one.
     type Ratio = Option<(f64, Option<f64>)>;
 
-    /// A rule that changes by ten times its ratio at one level, and outweighs from some warming on.
-    fn rule(ratio: Ratio, outweighs: Crossing) -> OfRule {
+    /// A rule that changes by ten times its ratio at one level, and outweighs from some warming on, with the upper end of its range.
+    fn rule(ratio: Ratio, outweighs: Crossing, q95_c: Option<f64>) -> OfRule {
+        let q05_c = q95_c.map(|_| 0.1);
         let signal_to_spread = ratio.map(|(value, monte_carlo_error)| Estimate { value, monte_carlo_error });
         let shift = ratio.map(|(value, _)| Shift {
             median: Estimate { value: -10.0 * value, monte_carlo_error: None },
@@ -176,7 +181,12 @@ mod tests {
         });
         let weight = Weight::of(signal_to_spread);
         let level = LevelOfRule { level_c: 2.0, shift, percent_change: None, signal_to_spread, weight };
-        OfRule { precipitation_spread: None, outweighs, outweighs_range: None, levels: vec![level] }
+        OfRule {
+            precipitation_spread: None,
+            outweighs,
+            outweighs_range: Some(CrossingRange { q05_c, q95_c }),
+            levels: vec![level],
+        }
     }
 
     /// By hand: 1.1 ± 0.1 lies within 1.645 errors of 1, 1.2 ± 0.1 and 0.8 ± 0.1 do not.
@@ -189,16 +199,17 @@ mod tests {
         assert_eq!([says(1.2, None), Weight::of(None)], [Weight::NoRatio; 2]);
     }
 
-    /// By hand: the study's own rules cannot tell, one rule says yes, one no, one has no number, and one was not tuned.
+    /// By hand: the study's own rules cannot tell, since others of their realizations might not reach it; one rule says yes, one no,
+    /// one has no number, and one was not tuned.
     #[test]
     fn rules_that_differ_are_named_though_the_studys_own_cannot_tell() {
         let at = |level_c| Crossing::At { level_c, until_c: None };
         let rules = [
-            rule(Some((1.0, Some(0.1))), at(2.0)),
-            rule(Some((1.5, Some(0.1))), at(1.5)),
-            rule(Some((0.5, Some(0.1))), Crossing::NotReached { up_to_c: 2.0 }),
-            rule(None, Crossing::Unknown),
-            rule(Some((9.0, Some(0.1))), at(0.1)),
+            rule(Some((1.0, Some(0.1))), at(2.0), None),
+            rule(Some((1.5, Some(0.1))), at(1.5), Some(1.6)),
+            rule(Some((0.5, Some(0.1))), Crossing::NotReached { up_to_c: 2.0 }, None),
+            rule(None, Crossing::Unknown, None),
+            rule(Some((9.0, Some(0.1))), at(0.1), Some(0.2)),
         ];
         let is_tuned = [true, true, true, true, false];
         let level = LevelOverRules::of(&rules, &is_tuned, 0).unwrap();
@@ -208,9 +219,10 @@ mod tests {
         let expected = RangeOverRules { lowest: -15.0, highest: -5.0, without: vec![3] };
         assert_eq!(level.shift, Some(expected));
         let outweighs = OutweighsOverRules::of(&rules, &is_tuned);
-        let expected = RangeOverRules { lowest: 1.5, highest: 2.0, without: vec![2, 3] };
+        let expected = RangeOverRules { lowest: 1.5, highest: 1.5, without: vec![0, 2, 3] };
         assert_eq!(outweighs.range_c, Some(expected));
-        assert_eq!((outweighs.not_reached, outweighs.unknown), (vec![2], vec![3]));
+        let others = [outweighs.does_not, outweighs.cannot_tell, outweighs.unknown];
+        assert_eq!(others, [vec![2], vec![0], vec![3]]);
         let of_two = LevelOverRules::of(&rules[..2], &is_tuned[..2], 0).unwrap();
         assert!(!of_two.hangs_on_rule, "one cannot tell and one says yes");
     }

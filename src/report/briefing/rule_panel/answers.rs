@@ -4,7 +4,7 @@ use super::super::super::numbers::{counted, fixed};
 use super::super::super::reader::Reader;
 use super::{ends_in_words, range_of_changes};
 use crate::figures::{rule_in_words, sentence};
-use crate::findings::{Crossing, LevelOverRules, MeasureByRule, RangeOverRules, RulePanel, Weight};
+use crate::findings::{Judged, LevelOverRules, MeasureByRule, RangeOverRules, RulePanel, Weight};
 
 /// What a rule can say at a level.
 const WEIGHTS: [Weight; 4] =
@@ -47,11 +47,6 @@ impl Panel<'_> {
     fn outweighs_from(&self) -> Option<String> {
         let outweighs = &self.measure.outweighs;
         let up_to = self.reader.level(self.measure.levels.last()?.level_c);
-        let (by_chance, not_reached): (Vec<usize>, Vec<usize>) = outweighs
-            .not_reached
-            .iter()
-            .copied()
-            .partition(|at| self.measure.rules[*at].may_outweigh_by_chance());
         let title = format!("the shift of {}", self.measure.measure.title);
         let mut said: Vec<String> = Vec::new();
         if let Some(range) = &outweighs.range_c {
@@ -63,13 +58,13 @@ impl Panel<'_> {
             ));
         }
         let subject = |said: &[String]| if said.is_empty() { title.clone() } else { "it".to_owned() };
-        if !not_reached.is_empty() {
+        if !outweighs.does_not.is_empty() {
             let spread = if said.is_empty() { " outweigh the precipitation spread" } else { "" };
-            let under = self.names_or_all(&not_reached, "any of these rules");
+            let under = self.names_or_all(&outweighs.does_not, "any of these rules");
             said.push(format!("{} does not{spread} up to {up_to} under {under}", subject(&said)));
         }
-        if !by_chance.is_empty() {
-            let under = self.names_or_all(&by_chance, "any of these rules");
+        if !outweighs.cannot_tell.is_empty() {
+            let under = self.names_or_all(&outweighs.cannot_tell, "any of these rules");
             let whether = if said.is_empty() {
                 format!("whether {title} outweighs the precipitation spread")
             } else {
@@ -85,7 +80,9 @@ impl Panel<'_> {
         }
         let falls_back: Vec<usize> = self
             .in_use()
-            .filter(|at| matches!(self.measure.rules[*at].outweighs, Crossing::At { until_c: Some(_), .. }))
+            .filter(|at| {
+                matches!(self.measure.rules[*at].judged(), Judged::Outweighs { until_c: Some(_), .. })
+            })
             .collect();
         let falls_back = if falls_back.is_empty() {
             String::new()
@@ -128,7 +125,7 @@ impl Panel<'_> {
     /// ` (+1.3 °C under the study's own rules, by chance +1.2 to +1.4)`.
     fn of_own(&self) -> String {
         let own = &self.measure.rules[0];
-        let Crossing::At { level_c, .. } = own.outweighs else { return String::new() };
+        let Judged::Outweighs { level_c, .. } = own.judged() else { return String::new() };
         let range = ends_in_words(own, self.reader);
         let range = range.map_or(String::new(), |range| format!(", Monte Carlo range {range}"));
         format!(" ({}{range}, under the study's own rules)", self.reader.between_levels(level_c))

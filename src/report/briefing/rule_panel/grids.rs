@@ -5,7 +5,7 @@ use super::super::super::reader::Reader;
 use super::ends_in_words;
 use crate::figures::rule_in_words;
 use crate::findings::{
-    Crossing, LevelOfRule, MeasureByRule, OfRule, PanelRule, Rule, RulePanel, Weight, is_at_bound,
+    Judged, LevelOfRule, MeasureByRule, OfRule, PanelRule, Rule, RulePanel, Weight, is_at_bound,
 };
 use crate::season::{Kind, Outcome};
 use maud::{Markup, html};
@@ -59,7 +59,7 @@ fn melt_factors(rule: &PanelRule, reader: Reader) -> String {
 pub(super) fn shifts(panel: &RulePanel, measure: &MeasureByRule, reader: Reader) -> Markup {
     let kind = measure.measure.kind;
     // Without a level above the reference there is nothing to outweigh from.
-    let has_from = measure.rules.iter().any(|rule| rule.outweighs != Crossing::Unknown);
+    let has_from = measure.rules.iter().any(|rule| rule.judged() != Judged::Unknown);
     let rows = panel.rules.iter().zip(&measure.rules).filter(|(rule, _)| rule.tuned.is_tuned);
     html! { div.scroll { table {
         caption {
@@ -103,15 +103,16 @@ fn cell(level: &LevelOfRule, kind: Kind, reader: Reader) -> String {
     }
 }
 
-/// `+1.3 °C (+1.2 to +1.5)`, `not up to +4 °C (+3.8 to above +4.0)`.
+/// `+1.3 °C (+1.2 to +1.5)`, `cannot tell (+3.8 to above +4.0)`, `not up to +4 °C`.
 fn from_where(found: &OfRule, reader: Reader) -> String {
     let range = ends_in_words(found, reader).map_or(String::new(), |range| format!(" ({range})"));
-    match found.outweighs {
-        Crossing::At { level_c, until_c } => {
+    match found.judged() {
+        Judged::Outweighs { level_c, until_c } => {
             let until = until_c.map(|until_c| format!(", until {}", reader.between_levels_bare(until_c)));
             format!("{}{range}{}", reader.between_levels(level_c), until.unwrap_or_default())
         }
-        Crossing::NotReached { up_to_c } => format!("not up to {}{range}", reader.level(up_to_c)),
-        Crossing::Unknown => DASH.to_owned(),
+        Judged::DoesNot { up_to_c } => format!("not up to {}", reader.level(up_to_c)),
+        Judged::CannotTell { .. } => format!("cannot tell{range}"),
+        Judged::Unknown => DASH.to_owned(),
     }
 }
