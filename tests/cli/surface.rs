@@ -210,6 +210,12 @@ fn levels_with_a_stated_change_are_told_apart_from_the_surface() {
     assert!(!drawing.contains("without the"), "warming is all that the levels do");
     exchange(&basin, "[warming]\n", "[warming]\nprecipitation_change_pct = [0, 5, 5, 5, 5]\n");
     let (break_even, tipping, drawing) = said("--force");
+    let summary = basin.read("out/summary.json");
+    assert!(
+        summary.contains(
+            "At the reference, one °C more alone, without the stated change of precipitation, takes"
+        )
+    );
     assert!(break_even.contains("more precipitation on every wet day on top of its stated change would"));
     assert!(tipping.contains("of warming with its stated change of precipitation"), "{tipping}");
     assert!(drawing.contains("alone, without the stated changes, it takes"));

@@ -26,15 +26,17 @@ pub(super) fn slopes(findings: &Findings, reader: Reader) -> Vec<String> {
     let Some(title) = surface.measures.first().map(|measure| measure.title.as_str()) else {
         return Vec::new();
     };
+    let alone =
+        if surface.levels_warm_alone { "" } else { " alone, without the stated change of precipitation," };
     let at = |level: usize| surface.slopes.iter().find(|of| of.level_c == findings.levels_c[level]);
     let telling = telling_level(findings).and_then(at);
     let mut words = Vec::new();
     if let Some(reference) = at(findings.reference) {
-        words.extend(both(reference, "At the reference", title, reader));
+        words.extend(both(reference, "At the reference", [title, alone], reader));
         words.extend(by_band(findings, reference, reader));
     }
     if let Some(telling) = telling {
-        words.extend(both(telling, &format!("At {}", reader.level(telling.level_c)), title, reader));
+        words.extend(both(telling, &format!("At {}", reader.level(telling.level_c)), [title, alone], reader));
         words.extend(interaction(telling, title, reader));
     }
     words.extend(surface.offset.as_ref().and_then(|of| offset(of, surface, title, reader)));
@@ -67,13 +69,13 @@ fn offset(of: &Offset, surface: &ResponseSurface, title: &str, reader: Reader) -
     }
 }
 
-fn both(at: &Slopes, place: &str, title: &str, reader: Reader) -> Option<String> {
+fn both(at: &Slopes, place: &str, [title, alone]: [&str; 2], reader: Reader) -> Option<String> {
     let Slope { per_degree_pct, per_percent_pct, .. } = at.basin;
     let (degree, percents) = (per_degree(per_degree_pct?, reader), per_percent_pct?);
     let takes = if degree.value <= 0.0 { "takes" } else { "adds" };
     let adds = if percents.value >= 0.0 { "adds" } else { "takes" };
     Some(format!(
-        "{place}, one {} more {takes} {} of the {title} there, and one percent more precipitation {adds} {}.",
+        "{place}, one {} more{alone} {takes} {} of the {title} there, and one percent more precipitation {adds} {}.",
         reader.units.warming().word,
         percent(degree),
         percent(percents)

@@ -37,7 +37,10 @@ fn one(findings: &Findings, of: &TippingLevel, cause: &str, reader: Reader) -> S
     }
     match of.fails {
         Crossing::At { level_c, .. } => {
-            let range = crossing_range(findings, of.fails_range, reader);
+            let range = match of.fails_range {
+                None => " in these realizations, too few to say what others would have".to_owned(),
+                range => crossing_range(findings, range, reader),
+            };
             format!(
                 "{name} ({asked}) begins to fail at about {} of {cause}{range}.",
                 reader.between_levels(level_c)

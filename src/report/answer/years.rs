@@ -83,6 +83,8 @@ fn low_snow(low: &LowSnow, findings: &Findings, reader: Reader) -> Option<String
             fixed(at.chance_ratio.value, 2),
             range(at.chance_ratio, 1.0, 2, "")
         ),
+        // A resample without a low year at the reference has no ratio, and so the ratio no range.
+        None if at.chance_ratio.q05.is_none() => "how many times as often cannot be told".to_owned(),
         None => "no telling whether more or less often".to_owned(),
     };
     Some(format!(
