@@ -16,8 +16,8 @@ use crate::figures::{FIGURES, Setting, of_sites};
 use crate::findings::{BandFindings, Findings};
 use crate::report::numbers::counted;
 use crate::report::{
-    Answer, Reader, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html, manifest_json,
-    publish, summary_json, tables,
+    Answer, Reader, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html,
+    data_package_json, manifest_json, publish, summary_json, tables, workbook_xlsx,
 };
 use crate::season::Measures;
 use serde::Serialize;
@@ -163,7 +163,12 @@ fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Fa
     for (slug, svg) in slugs.iter().zip(&drawn_of_sites) {
         files.push((format!("figures/{slug}.svg"), svg.text.clone().into_bytes()));
     }
-    files.extend(tables(study));
+    let tables = tables(study);
+    let workbook = workbook_xlsx(study.title, &tables).map_err(|error| Failure::Ours(error.to_string()))?;
+    let package = data_package_json(study.title, &tables).map_err(ours)?;
+    files.extend(tables);
+    files.push(("tables.xlsx".to_owned(), workbook));
+    files.push(("datapackage.json".to_owned(), package));
     files.push(("briefing.html".to_owned(), briefing_html(study, answer, &drawn, &drawn_of_sites)));
     files.push(("summary.json".to_owned(), summary_json(study, answer).map_err(ours)?));
     let names: Vec<&str> = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();

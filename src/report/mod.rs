@@ -4,7 +4,9 @@ mod answer;
 mod briefing;
 mod cautions;
 mod checked;
+mod columns;
 mod daily;
+mod data_package;
 mod fit;
 mod generator_sheet;
 mod json;
@@ -22,11 +24,13 @@ mod tables;
 mod terms;
 mod trends;
 mod weather;
+mod workbook;
 
 pub use answer::{Answer, answer_in_words, period_name};
 pub use briefing::briefing_html;
 pub use checked::Checked;
 pub use daily::{DailyError, daily_csv};
+pub use data_package::data_package_json;
 pub use fit::{FitReport, fit_files, fit_in_words, left_out_lines};
 pub use observed::{comparison_json, comparison_words, observed_tables};
 pub use publish::{PublishError, may_replace, publish};
@@ -35,6 +39,7 @@ pub use study::{FittedFrom, Input, Origin, Record, SetsFrom, Study};
 pub use summary::{daily_manifest_json, manifest_json, summary_json};
 pub use tables::{ReportFile, tables};
 pub use weather::weather_csv;
+pub use workbook::workbook_xlsx;
 
 /// Version of every JSON document we write: a number removed or renamed raises it.
 pub const SCHEMA_VERSION: u32 = 3;

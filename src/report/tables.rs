@@ -2,6 +2,7 @@
 //!
 //! One file a table, and one line of `tables`.
 
+mod about;
 mod break_even;
 mod by_year;
 mod cells;
@@ -24,6 +25,7 @@ mod through_year;
 mod volumes;
 mod yardsticks;
 
+pub(super) use about::about;
 pub(super) use cells::{finish, optional, write, yes_or_no};
 pub(super) use ground::GroundColumns;
 

@@ -20,6 +20,7 @@ mod keys;
 mod methods;
 mod normal;
 mod observed;
+mod packages;
 mod parameter_sets;
 mod places;
 mod results;
