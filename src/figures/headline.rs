@@ -4,7 +4,8 @@ use super::Setting;
 use super::labels::{
     between_levels, day_of_month, days_in_words, is_nothing, level, percent_size, sentence, size_and_unit,
 };
-use crate::findings::{Crossing, Findings, Judged, MeasureFindings, judged};
+use crate::findings::{Crossing, Findings, Judged, MeasureFindings, Spread, judged};
+use crate::season::{Kind, LEAST_REFERENCE_MM};
 use crate::units::UnitSystem;
 
 /// The level that a headline speaks of: the first at which the shift outweighs the spread, else the warmest; where none
@@ -23,6 +24,17 @@ fn spoken_of(findings: &Findings, measure: &MeasureFindings) -> Option<usize> {
 /// precipitation spread`.
 pub(super) fn of_amount(findings: &Findings, measure: &MeasureFindings, units: UnitSystem) -> String {
     let title = sentence(&measure.measure.title);
+    // Ratios of hardly any snow would be of rounding and single storms.
+    let is_scarce = |spread: &Spread| spread.q50 < LEAST_REFERENCE_MM;
+    if let Some(spread) = measure.precipitation_spread.as_ref().filter(|spread| is_scarce(spread))
+        && measure.measure.kind == Kind::AmountMm
+    {
+        return format!(
+            "There is hardly any snow to lose: {} is {} at the reference",
+            measure.measure.title,
+            size_and_unit(units, spread.q50)
+        );
+    }
     let spoken = spoken_of(findings, measure).and_then(|at| measure.levels.get(at));
     let Some(spoken) = spoken else {
         let median =

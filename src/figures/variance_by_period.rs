@@ -40,13 +40,15 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
             Some((*at, measure.partitions.iter().find(|of| of.level_c == *level_c)?))
         })
         .collect();
-    let (_, farthest) = partitions.last()?;
+    let reference_c = findings.levels_c[findings.reference];
+    let distance = |of: &Partition| (of.level_c - reference_c).abs();
+    let (_, farthest) = partitions.iter().max_by(|(_, a), (_, b)| distance(a).total_cmp(&distance(b)))?;
     let title = title(&measure.measure.title, farthest, cause, setting.units);
     let which = shown.in_words(findings, setting.units);
     let said = Said {
         ensemble: format!("{}, the reference and one level at a time.{which}", ensemble(findings)),
         key: format!(
-            "Bars, from the left: the {cause} (in the level's colour, its share at the right, with a line over its 5–95 % range); how \
+            "Bars, from the left: the {cause} (in the level's colour, its share at the right, with a line below along its 5–95 % range); how \
               differently realizations and years take it (light grey); the realization (dark grey); the year within it (pale). \
               Where a realization holds a single period the two cannot be told apart, and stand as one."
         ),
@@ -79,6 +81,7 @@ fn title(measure: &str, partition: &Partition, cause: &str, units: UnitSystem) -
         HoldsMost::Always => "in every averaging period, single years included".to_owned(),
         HoldsMost::From { years, .. } => format!("in means over {years} years and more"),
         HoldsMost::Never => format!("in no averaging period up to {longest} years"),
+        HoldsMost::PerhapsFrom { years } => format!("at most in means over {years} years and more"),
         HoldsMost::CannotTell => {
             return format!(
                 "{measure}: whether {place} of {cause} holds the largest share of the variance cannot be told"

@@ -68,6 +68,11 @@ pub enum HoldsMost {
         /// Whether a shorter one cannot be told.
         is_blurred: bool,
     },
+    /// Not in shorter means, perhaps in those over so many years and more: there the ranges straddle.
+    PerhapsFrom {
+        /// The shortest averaging period that cannot be told.
+        years: usize,
+    },
     /// In no averaging period that the realizations hold.
     Never,
     /// The ranges straddle.
@@ -101,7 +106,9 @@ impl Partition {
         let periods: Option<Vec<PartitionedPeriod>> =
             held.map(|years| PartitionedPeriod::of(years, reference, level, resamples)).collect();
         let periods = periods.filter(|periods| !periods.is_empty())?;
-        Some(Self { level_c, warming_holds_most: holds_most(&periods), periods })
+        let side = |period: &PartitionedPeriod| (period.years, period.level_less_largest_other.side_of(0.0));
+        let sides: Vec<(usize, Option<bool>)> = periods.iter().map(side).collect();
+        Some(Self { level_c, warming_holds_most: holds_most(&sides), periods })
     }
 }
 
@@ -195,15 +202,26 @@ fn shares(of: &[Sums], blocks: usize, weights: &[u32]) -> Option<[f64; PARTS]> {
     (total.is_finite() && total > LEAST_VARIANCE).then(|| parts.map(|part| part / total))
 }
 
-fn holds_most(periods: &[PartitionedPeriod]) -> HoldsMost {
-    let sides: Vec<Option<bool>> =
-        periods.iter().map(|period| period.level_less_largest_other.side_of(0.0)).collect();
-    let first = sides.iter().rposition(|side| *side != Some(true)).map_or(0, |last| last + 1);
-    match periods.get(first) {
-        Some(_) if first == 0 => HoldsMost::Always,
-        Some(period) => HoldsMost::From { years: period.years, is_blurred: sides[..first].contains(&None) },
-        None if sides.iter().all(|side| *side == Some(false)) => HoldsMost::Never,
-        None => HoldsMost::CannotTell,
+/// From the averaging periods, ascending, and on which side of 0 the warming's share less the largest other lies in each.
+fn holds_most(periods: &[(usize, Option<bool>)]) -> HoldsMost {
+    let is = |side: Option<bool>| move |(_, of): &&(usize, Option<bool>)| *of == side;
+    let largest = periods.iter().rev().take_while(is(Some(true))).count();
+    let shorter = &periods[..periods.len() - largest];
+    if let Some((years, _)) = periods.get(shorter.len()) {
+        let is_blurred = shorter.iter().any(|(_, side)| side.is_none());
+        return if shorter.is_empty() {
+            HoldsMost::Always
+        } else {
+            HoldsMost::From { years: *years, is_blurred }
+        };
+    }
+    let open = periods.iter().rev().take_while(is(None)).count();
+    let (clear, open) = periods.split_at(periods.len() - open);
+    match open.first() {
+        _ if clear.iter().any(|(_, side)| *side != Some(false)) => HoldsMost::CannotTell,
+        None => HoldsMost::Never,
+        Some((years, _)) if !clear.is_empty() => HoldsMost::PerhapsFrom { years: *years },
+        Some(_) => HoldsMost::CannotTell,
     }
 }
 

@@ -95,7 +95,10 @@ impl RecordCoincidence {
             years.iter().for_each(|(_, values)| counts[place(values)] += 1);
             Cells::of(counts)
         };
+        // Below bare ground nothing lies, so that no year is asked.
+        let has_snow = low_snow_below_mm > 0.0;
         let low = |cell: usize, of: u64| {
+            let of = if has_snow { of } else { 0 };
             let is_low = |values: &[f64; 3]| place(values) == cell && values[0] < low_snow_below_mm;
             Counted::new(years.iter().filter(|(_, values)| is_low(values)).count() as u64, of)
         };

@@ -45,7 +45,7 @@ pub struct RecordOdds {
 pub struct RecordOddsLevel {
     /// The level, degC.
     pub level_c: f64,
-    /// Chance of a year below the resampled record's own low-snow limit.
+    /// Chance of a year below the resampled record's own low-snow limit; years at the limit count half.
     pub low_chance: Range,
     /// Over that record's chance at the reference; none where that is nothing in one of them.
     pub chance_ratio: Option<Range>,
@@ -79,8 +79,11 @@ impl RefitOdds {
         let each = |of: &dyn Fn(&ArrayView2<'_, f64>) -> f64| -> Vec<f64> {
             headline.axis_iter(Axis(0)).map(|level| of(&level)).collect()
         };
+        // Resampled winters stand at the limit many at a time: ties count half.
         let low = |level: &ArrayView2<'_, f64>| {
-            level.iter().filter(|mm| **mm < below_mm).count() as f64 / level.len() as f64
+            let count =
+                |is: fn(f64, f64) -> bool| level.iter().filter(|mm| is(**mm, below_mm)).count() as f64;
+            (count(|mm, limit| mm < limit) + count(|mm, limit| mm == limit) / 2.0) / level.len() as f64
         };
         let runs = |run: usize| {
             each(&|level| {

@@ -227,7 +227,9 @@ impl SurfaceQuestions<'_> {
             Root::Stays(stays) => (None, Some(stays)),
             Root::Unknown => (None, None),
         };
-        let range_pct = precipitation_change_pct.and_then(|_| self.range_pct(nodes, warming_c));
+        // At the reference it is none by definition, without an error.
+        let is_found = precipitation_change_pct.filter(|_| warming_c != self.reference_c);
+        let range_pct = is_found.and_then(|_| self.range_pct(nodes, warming_c));
         CurvePoint { warming_c, precipitation_change_pct, stays, range_pct }
     }
 

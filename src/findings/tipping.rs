@@ -7,6 +7,9 @@ use super::surface::{Change, Nodes, SurfaceQuestions};
 use ndarray::ArrayView3;
 use serde::Serialize;
 
+/// So many standard errors to either side hold 90 % of a normal distribution.
+const OF_90_PCT: f64 = 1.645;
+
 /// Something that is to hold, over the single years of all realizations.
 #[derive(Debug, Clone, PartialEq, Serialize)]
 pub struct Criterion {
@@ -47,6 +50,9 @@ pub struct TippingLevel {
     /// Whether it holds at the reference; nothing is said of where it fails if not. None where it cannot be asked: the limit of a
     /// low-snow year is bare ground, below which nothing lies.
     pub holds_at_reference: Option<bool>,
+    /// Whether it lies so near its limit at the reference, within 1.645 Monte Carlo errors or one year in all, that these realizations
+    /// cannot tell whether it holds there.
+    pub too_near_at_reference: bool,
     /// The first warming at which it fails, scanning up from the reference, linear between levels.
     pub fails: Crossing,
     /// The Monte Carlo range of that warming: 5-95 % over resampled realizations; a resample that fails at the reference counts
@@ -171,6 +177,14 @@ impl TippingLevel {
             .map(|resample| first_failure(&|level| resampled[level].get(resample).copied().flatten()));
         Self {
             criterion: criterion.clone(),
+            too_near_at_reference: levels.get(reference).is_some_and(|level| {
+                let one_year = match asks {
+                    Asks::MedianAtLeast { .. } => 0.0,
+                    Asks::LowSnowYearsAtMost { .. } => 1.0 / reference_years.len() as f64,
+                };
+                let error = level.value.monte_carlo_error.unwrap_or(0.0);
+                asks.margin(level.value.value).abs() < (OF_90_PCT * error).max(one_year)
+            }),
             holds_at_reference: levels.get(reference).map(|level| level.holds),
             fails,
             fails_range: range_of(of_resamples).filter(|_| !levels.is_empty()),
@@ -225,6 +239,12 @@ mod tests {
             Crossing::NotReached { up_to_c: 2.0 },
             "as much as is asked is enough"
         );
+        assert!(!found.too_near_at_reference);
+        let near = asked(
+            Asks::MedianAtLeast { swe_mm: 198.0, volume_hm3: None },
+            &[[190.0, 190.0, 210.0, 210.0], [80.0; 4]],
+        );
+        assert!(near.too_near_at_reference, "two realizations 20 mm apart know their median to some 7 mm");
         let already = at_least(201.0);
         assert_eq!(already.holds_at_reference, Some(false));
         assert_eq!(already.fails, Crossing::At { level_c: 0.0, until_c: None });

@@ -55,7 +55,7 @@ pub(super) fn number(cell: &str) -> Option<f64> {
 
 /// The unit that a column's name ends with or holds before an end or an error, in the trade's letters.
 pub(super) fn unit(column: &str) -> Option<&'static str> {
-    const UNITS: [(&str, &str); 17] = [
+    const UNITS: [(&str, &str); 16] = [
         ("thousand_acre_feet", "thousand acre-feet"),
         ("mm_per_degC_day", "mm per degC and day"),
         ("m_per_degC", "m per degC"),
@@ -72,10 +72,9 @@ pub(super) fn unit(column: &str) -> Option<&'static str> {
         ("pct", "%"),
         ("mm", "mm"),
         ("days", "days"),
-        ("in", "in"),
     ];
-    // `_m` and `_ft` are looked for at the end alone: a letter says too little elsewhere.
-    let at_end = [("_m", "m"), ("_ft", "ft"), ("_mi2", "mi2"), ("_share", "share, 0 to 1")];
+    // Looked for at the end alone: a letter or two say too little elsewhere.
+    let at_end = [("_m", "m"), ("_ft", "ft"), ("_in", "in"), ("_mi2", "mi2"), ("_share", "share, 0 to 1")];
     let is_part = |part: &str| {
         column == part || column.ends_with(&format!("_{part}")) || column.contains(&format!("_{part}_"))
     };

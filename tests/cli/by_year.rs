@@ -229,6 +229,15 @@ fn the_cold_demo_speaks_for_its_numbers() {
         (0, _) if sides.iter().all(|side| *side == Some(false)) => {
             "in no averaging period up to 30 years".to_owned()
         }
+        (0, _) if sides.iter().is_sorted_by_key(Option::is_none) && !sides.contains(&Some(true)) => {
+            let open = sides.iter().position(Option::is_none).unwrap();
+            let years = &first["periods"][open]["years"];
+            if open == 0 {
+                "perhaps (too close to tell)".to_owned()
+            } else {
+                format!("perhaps from {years}-year means on (too close to tell), in no shorter ones")
+            }
+        }
         (0, _) => "perhaps (too close to tell)".to_owned(),
         (_, years) => format!("from {}-year means on", years.unwrap()),
     };

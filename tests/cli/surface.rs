@@ -80,7 +80,7 @@ fn criteria_tip_where_the_medians_say() {
     let criterion =
         |name: &str, asks: String| format!("\n[[findings.criteria]]\nname = \"{name}\"\n{asks}\n");
     let more = criterion("all", format!("median_swe_at_least_mm = {median_mm}"))
-        + &criterion("more", format!("median_swe_at_least_mm = {}", 1.01 * median_mm))
+        + &criterion("more", format!("median_swe_at_least_mm = {}", 1.5 * median_mm))
         + &criterion("most", format!("median_swe_at_least_mm = {}", 0.8 * median_mm))
         + &criterion(
             "volume",
@@ -220,6 +220,21 @@ fn levels_with_a_stated_change_are_told_apart_from_the_surface() {
     assert!(tipping.contains("of warming with its stated change of precipitation"), "{tipping}");
     assert!(drawing.contains("alone, without the stated changes, it takes"));
     assert!(drawing.contains("fails below it (without the levels"));
+}
+
+/// By hand: where the reference is not 0 degC, what 20 % more precipitation makes up for is counted from it.
+#[test]
+fn what_is_made_up_for_is_counted_from_the_reference() {
+    let basin =
+        demo("\n[findings.surface]\nwarming_c = [0, 1, 2, 3]\nprecipitation_change_pct = [-20, 0, 20, 40]\n");
+    let scenario = basin.read("mine.toml");
+    let line = scenario.lines().find(|line| line.starts_with("levels_c")).unwrap().to_owned();
+    exchange(&basin, &line, "levels_c = [0, 1, 2, 3]\nreference_c = 1");
+    let found = findings(&basin, "--into out");
+    let level_c = found["surface"]["offset"]["warming"]["level_c"].as_f64().unwrap();
+    assert!(level_c > 1.0);
+    let page = basin.read("out/briefing.html");
+    assert!(page.contains(&format!("makes up for about +{:.1} °C of warming", level_c - 1.0)), "{level_c}");
 }
 
 /// What is asked of the surface is answered also where no level of the study is warmer than the reference.

@@ -93,7 +93,14 @@ impl Rows {
         let alone = if surface.levels_warm_alone { "" } else { " (without the levels' stated change)" };
         let lines = surface.failure_lines.iter().zip(failure_strokes());
         rows.extend(lines.map(|(line, stroke)| {
-            (Mark::Line(stroke), format!("{}: holds above the line, fails below it{alone}", line.name))
+            let says = if line.margins.iter().all(|margin| *margin >= 0.0) {
+                "holds everywhere on the grid"
+            } else if line.margins.iter().all(|margin| *margin < 0.0) {
+                "fails everywhere on the grid"
+            } else {
+                "holds above the line, fails below it"
+            };
+            (Mark::Line(stroke), format!("{}: {says}{alone}", line.name))
         }));
         rows.push((
             Mark::Line(Stroke::solid(INK, 2.4)),

@@ -191,3 +191,21 @@ fn every_answer_can_be_given() {
     let flat = Array2::from_elem((5, 10), 3.0);
     assert_eq!(Partition::of(1.0, &flat.view(), &flat.view(), &Resamples::new(1, 5)), None);
 }
+
+/// By hand, of each kind of answer.
+#[test]
+fn the_averaging_period_from_which_on() {
+    let asked = |sides: [Option<bool>; 4]| {
+        let periods: Vec<(usize, Option<bool>)> = [1, 5, 10, 30].into_iter().zip(sides).collect();
+        holds_most(&periods)
+    };
+    let [yes, no, open] = [Some(true), Some(false), None];
+    assert_eq!(asked([yes; 4]), HoldsMost::Always);
+    assert_eq!(asked([no, no, yes, yes]), HoldsMost::From { years: 10, is_blurred: false });
+    assert_eq!(asked([no, open, yes, yes]), HoldsMost::From { years: 10, is_blurred: true });
+    assert_eq!(asked([no, no, no, open]), HoldsMost::PerhapsFrom { years: 30 });
+    assert_eq!(asked([no; 4]), HoldsMost::Never);
+    for sides in [[open; 4], [open, no, no, open], [no, yes, no, open], [yes, no, no, no]] {
+        assert_eq!(asked(sides), HoldsMost::CannotTell, "{sides:?}");
+    }
+}

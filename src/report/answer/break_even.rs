@@ -80,6 +80,11 @@ fn of_level(
         });
     };
     let size = fixed(pct.abs(), usize::from(pct.abs() < 9.95));
+    if size == "0.0" {
+        return Some(format!(
+            "At {level}, the {name} stands at the reference's median: there is nothing to be made up for."
+        ));
+    }
     if pct <= 0.0 {
         return Some(format!(
             "At {level}, the {name} would stand at the reference's median with {size} % less precipitation{on_top}: there is nothing to \

@@ -4,7 +4,8 @@ use super::super::numbers::{fixed, stated};
 use super::super::reader::Reader;
 use super::{chance_in_table, chance_in_words as chance};
 use crate::findings::{
-    Chance, Coincidence, Counted, Depends, Findings, PeriodsCompared, RecordCoincidence, SnowDroughts,
+    Chance, Coincidence, Counted, Depends, Estimate, Findings, PeriodsCompared, RecordCoincidence,
+    SnowDroughts,
 };
 
 /// Shares of fewer years than this say nothing of a period.
@@ -31,7 +32,12 @@ fn in_ten(share: f64) -> String {
 }
 
 fn said(found: Chance) -> String {
-    format!("{} ({})", in_ten(found.estimate.value), chance_in_table(found))
+    let in_words = match (found.bound, found.estimate.value) {
+        (Some(_), ..=0.0) => "no simulated years".to_owned(),
+        (Some(_), 1.0..) => "all simulated years".to_owned(),
+        (_, share) => in_ten(share),
+    };
+    format!("{in_words} ({})", chance_in_table(found))
 }
 
 fn coincide(found: &Coincidence, findings: &Findings, reader: Reader) -> Option<String> {
@@ -49,8 +55,10 @@ fn coincide(found: &Coincidence, findings: &Findings, reader: Reader) -> Option<
     let given = level.low_snow_given_dry;
     words += &match (given.warm, given.cool) {
             (Some(warm), Some(cool)) => {
-                let ratio = given.ratio.map_or_else(
-                    || ": no dry and cool year is low in snow, so that there is no ratio.".to_owned(),
+                // Without low years of both kinds, or in every resample, a ratio says nothing.
+                let is_told = |ratio: &Estimate| ratio.value > 0.0 && ratio.monte_carlo_error.is_some_and(|error| error > 0.0);
+                let ratio = given.ratio.filter(is_told).map_or_else(
+                    || ": too few to say how many times as often.".to_owned(),
                     |ratio| {
                         let error = ratio
                             .monte_carlo_error
@@ -90,7 +98,7 @@ fn depends(found: &Coincidence, findings: &Findings) -> Option<String> {
         }
     };
     Some(format!(
-        "About the reference's own medians, dry and warm years come {factor}{error} times as often as if the two knew nothing of each other: {verdict}. It was made from the record, and whether \
+        "About the reference's own medians, dry and warm years come {factor}{error} times as often as if the two knew nothing of each other: {verdict}. That weather was made from the record, and whether \
          the climate itself has such a tie only the record can say."
     ))
 }

@@ -93,7 +93,8 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
     let dry_and_warm = dry_and_warm::dry_and_warm(findings, reader);
     let elevations = elevations::elevations(findings, reader);
     if is_scarce(headline) {
-        return Answer { verdict, dry_and_warm, elevations, ..Answer::default() };
+        let tipping = tipping::tipping(findings, cause, reader);
+        return Answer { verdict, dry_and_warm, elevations, tipping, ..Answer::default() };
     }
     let levels = || headline.levels.iter();
     let changed = |level: &&LevelFindings| level.shift.is_some();

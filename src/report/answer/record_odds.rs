@@ -16,15 +16,24 @@ pub(super) fn record_odds(findings: &Findings, reader: Reader) -> Option<String>
     let times = level.chance_ratio.map_or(String::new(), |ratio| {
         format!(", {} to {} times that record's reference", fixed(ratio.q05, 1), fixed(ratio.q95, 1))
     });
+    let years = findings.years;
     let runs = level.runs.first().map_or(String::new(), |run| {
-        format!(", and the chance of {} low years in a row at {}", run.years, percent(run.chance))
+        format!(
+            "; that a {years}-year realization holds {} years in a row at or below the 30 % quantile, at {}",
+            run.years,
+            percent(run.chance)
+        )
     });
+    let own = findings.by_year.as_ref().and_then(|by_year| by_year.low_snow.as_ref());
+    let own = own.and_then(|own| own.levels.iter().find(|own| own.level_c == level.level_c));
+    let own = own
+        .map_or(String::new(), |own| format!(" (from this record {} %)", fixed(100.0 * own.chance.value, 0)));
     let snowless = match found.records_run - found.records {
         0 => String::new(),
         count => format!("; {count} more had no snow to be low in"),
     };
     Some(format!(
-        "Another record of the same kind would put low-snow years at {} at {} of all{times}{runs} (5–95 % of {} resampled records, {} \
+        "Another record of the same kind would put low-snow years at {} at {} of all{own}{times}{runs} (5–95 % of {} resampled records, {} \
          realizations of each, each with its own limits{snowless}): the range of having only this record, which more realizations would not \
          narrow.",
         reader.level(level.level_c),

@@ -37,19 +37,32 @@ pub(super) fn slopes(findings: &Findings, reader: Reader) -> Vec<String> {
     }
     if let Some(telling) = telling {
         words.extend(both(telling, &format!("At {}", reader.level(telling.level_c)), [title, alone], reader));
-        words.extend(interaction(telling, title, reader));
+        words.extend(interaction(telling, (title, findings.levels_c[findings.reference]), reader));
     }
-    words.extend(surface.offset.as_ref().and_then(|of| offset(of, surface, title, reader)));
+    words.extend(
+        surface
+            .offset
+            .as_ref()
+            .and_then(|of| offset(of, surface, (title, findings.levels_c[findings.reference]), reader)),
+    );
     words
 }
 
 /// The warming that an increase of precipitation makes up for.
-fn offset(of: &Offset, surface: &ResponseSurface, title: &str, reader: Reader) -> Option<String> {
+fn offset(
+    of: &Offset,
+    surface: &ResponseSurface,
+    (title, reference_c): (&str, f64),
+    reader: Reader,
+) -> Option<String> {
     let more = format!("{} % precipitation alone", signed(of.precipitation_change_pct, 0));
     match of.warming {
         Crossing::At { level_c, .. } => {
             let end = |end: Option<f64>| {
-                end.map_or_else(|| "beyond the grid".to_owned(), |end_c| reader.between_levels_bare(end_c))
+                end.map_or_else(
+                    || "beyond the grid".to_owned(),
+                    |end_c| reader.between_levels_bare(end_c - reference_c),
+                )
             };
             let range = of.range.filter(|range| range.q05_c.is_some() || range.q95_c.is_some());
             let range = range.map_or(String::new(), |range| {
@@ -57,7 +70,7 @@ fn offset(of: &Offset, surface: &ResponseSurface, title: &str, reader: Reader) -
             });
             Some(format!(
                 "{more} makes up for about {} of warming{range}: there the median {title} is the reference's.",
-                reader.between_levels(level_c)
+                reader.between_levels(level_c - reference_c)
             ))
         }
         Crossing::NotReached { up_to_c } => Some(format!(
@@ -111,11 +124,11 @@ fn by_band(findings: &Findings, at: &Slopes, reader: Reader) -> Option<String> {
 }
 
 /// Whether warming and precipitation add.
-fn interaction(at: &Slopes, title: &str, reader: Reader) -> Option<String> {
+fn interaction(at: &Slopes, (title, reference_c): (&str, f64), reader: Reader) -> Option<String> {
     let (found, pct) = (at.interaction_mm?, at.interaction_pct?);
     let together = format!(
         "Warming by {} and {} % precipitation together",
-        reader.level(at.level_c),
+        reader.level(at.level_c - reference_c),
         signed(INTERACTION_PCT, 0)
     );
     let error = found.monte_carlo_error?;

@@ -26,6 +26,11 @@ fn one(findings: &Findings, of: &TippingLevel, cause: &str, reader: Reader) -> S
         ),
     };
     let name = &of.criterion.name;
+    if of.too_near_at_reference {
+        return format!(
+            "{name} ({asked}) lies so near its limit at the reference that these realizations cannot tell whether it holds even there."
+        );
+    }
     match of.holds_at_reference {
         Some(true) => {}
         Some(false) => return format!("{name} ({asked}) does not hold even at the reference."),

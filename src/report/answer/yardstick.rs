@@ -28,6 +28,10 @@ pub(super) fn yardstick(
         reader.amount(spread.q05),
         reader.amount(spread.q95)
     )];
+    // Realizations too few for a verdict have none by another yardstick either.
+    if headline.outweighs_range.is_none() {
+        return words;
+    }
     let Some(study) = headline.yardsticks.iter().filter(own).find(|of| of.times_assumed == 1.0) else {
         return words;
     };

@@ -52,6 +52,9 @@ fn holds_most(partitions: &[Partition], findings: &Findings, cause: &str, reader
                 format!("from {years}-year means on (a shorter period comes too close to tell)")
             }
             HoldsMost::Never => format!("in no averaging period up to {longest} years"),
+            HoldsMost::PerhapsFrom { years } => {
+                format!("perhaps from {years}-year means on (too close to tell), in no shorter ones")
+            }
             HoldsMost::CannotTell => "perhaps (too close to tell)".to_owned(),
         };
         format!("at {} {when}", listed(levels))
@@ -59,7 +62,7 @@ fn holds_most(partitions: &[Partition], findings: &Findings, cause: &str, reader
     let groups: Vec<String> = groups.iter().map(said).collect();
     (!groups.is_empty()).then(|| {
         format!(
-            "Years, and means over several, differ by the {cause}, by chance, and by how differently they take it: of these three \
+            "Years, and means over several, differ by the {cause}, by chance, and by how differently years and realizations take the {cause}: of these three \
              the {cause} holds the largest share {}.",
             groups.join("; ")
         )

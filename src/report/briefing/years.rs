@@ -155,6 +155,7 @@ fn partitions(measure: &MeasureByYear, cause: &str, reader: Reader) -> Markup {
     let holds = |of: &Partition| match of.warming_holds_most {
         HoldsMost::Always => "always".to_owned(),
         HoldsMost::From { years, .. } => format!("from {years}-year means on"),
+        HoldsMost::PerhapsFrom { years } => format!("perhaps from {years}-year means on"),
         HoldsMost::Never => "never".to_owned(),
         HoldsMost::CannotTell => "cannot tell".to_owned(),
     };

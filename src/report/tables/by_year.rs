@@ -71,6 +71,7 @@ fn partitions(found: &ByYear, units: UnitSystem) -> Vec<u8> {
             let (word, from) = match partition.warming_holds_most {
                 HoldsMost::Always => ("always", None),
                 HoldsMost::From { years, .. } => ("from", Some(years)),
+                HoldsMost::PerhapsFrom { years } => ("perhaps from", Some(years)),
                 HoldsMost::Never => ("never", None),
                 HoldsMost::CannotTell => ("cannot tell", None),
             };
