@@ -189,7 +189,7 @@ fn projections_are_read_and_laid_over() {
 /// tip at; the surface's lines are of warming alone, and say so.
 #[test]
 fn levels_with_a_stated_change_are_told_apart_from_the_surface() {
-    let criterion = "\n[[findings.criteria]]\nname = \"Refill\"\nmedian_swe_at_least_mm = 250\n";
+    let criterion = "\n[[findings.criteria]]\nname = \"Refill\"\nmedian_swe_at_least_mm = 400\n";
     let basin = demo(&format!("{SMALL}{criterion}"));
     let said = |flags: &str| {
         findings(&basin, &format!("--into out {flags}"));
