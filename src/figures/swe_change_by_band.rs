@@ -9,7 +9,7 @@ use super::shown::{Shown, name};
 use super::theme::{EDGE, INK, LABEL, MARGIN_PX, NAME, NOTE, QUIET, WIDTH_PX, level_ink};
 use super::value_ticks::ValueTicks;
 use super::{Figure, Part, Setting, Svg, ensemble};
-use crate::findings::{BandChange, Dominates, Findings, Places, Sign};
+use crate::findings::{BandChange, Crossover, Dominates, Findings, Places, Sign};
 use crate::units::UnitSystem;
 
 /// The figure.
@@ -104,8 +104,10 @@ fn lines(findings: &Findings, places: &Places, farthest: usize, units: UnitSyste
             (m, format!("Snow line, {} {word}, {}", elevation(units, m), name(findings, at, units)))
         }));
     }
+    // A crossover that other realizations would not have is told on the page, and not drawn as if it stood.
+    let is_firm = |crossover: &&Crossover| crossover.range.is_none_or(|range| range.is_firm());
     if let Some(Dominates::Crossover { elevation_m }) =
-        places.crossover.get(findings.reference).map(|crossover| crossover.found)
+        places.crossover.get(findings.reference).filter(is_firm).map(|crossover| crossover.found)
     {
         lines.push((elevation_m, format!("Crossover, {} {word}", elevation(units, elevation_m))));
     }

@@ -72,6 +72,16 @@ pub struct CrossoverRange {
     pub share_alike: f64,
 }
 
+/// An answer that fewer resampled realizations share is not firm.
+const FIRM_SHARE: f64 = 0.9;
+
+impl CrossoverRange {
+    /// Whether nearly all resamples say the same as all realizations together.
+    pub fn is_firm(&self) -> bool {
+        self.share_alike >= FIRM_SHARE
+    }
+}
+
 /// Sums of a realization's years, each value less the mean of all: years, SWE, temperature and precipitation, their squares and
 /// SWE's products with the two.
 type Sums = [f64; 9];

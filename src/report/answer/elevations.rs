@@ -7,8 +7,6 @@ use crate::findings::{
     SnowLine,
 };
 
-/// An answer that fewer resampled realizations share is not firm.
-const FIRM_SHARE: f64 = 0.9;
 /// What a range in brackets is, said behind them.
 const IN_BRACKETS: &str = "in brackets 5–95 % over resampled realizations";
 
@@ -186,7 +184,7 @@ fn crossovers(places: &Places, findings: &Findings, reader: Reader) -> Vec<Strin
 
 fn crossover(found: &Crossover, reader: Reader) -> String {
     let resampled = found.range.map_or(String::new(), |range| {
-        let firm = if range.share_alike < FIRM_SHARE { ", which is no firm answer" } else { "" };
+        let firm = if !range.is_firm() { ", which is no firm answer" } else { "" };
         format!(" {} % of resampled realizations say the same{firm}.", fixed(100.0 * range.share_alike, 0))
     });
     let at = |elevation_m: f64| {

@@ -36,6 +36,13 @@ pub(super) fn how_sure(findings: &Findings, headline: &MeasureFindings, reader: 
             ));
         }
     }
+    if let Some(record) = headline.record_range.as_ref().filter(|record| !record.is_telling()) {
+        words.push(format!(
+            "What another record of the same kind would say is not told: of {} years and {} realizations of each resampled record it would \
+             mostly be noise.",
+            record.record_years, record.realizations
+        ));
+    }
     words.extend(chance::could_be_hidden(findings, &headline.levels[at], reader));
     words
 }
