@@ -78,11 +78,13 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         changed.iter().map(|changed| changed.iter().map(|of_group| of_group as _).collect()).collect();
     let of_records = Plan { realizations: of_a_record, ..plan };
     let of_records = run_records(&of_records, &of_each_record, progress).map_err(halted)?;
-    let refit = |seasons: BasinSeasons| {
-        let (years, reference) = (ready.drawn_from.years.len(), warming.reference);
+    let (record_years_in_use, reference) = (ready.drawn_from.years.len(), warming.reference);
+    let odds_of = |seasons: &BasinSeasons| {
         let below_quantile = scenario.findings.low_snow.below_quantile;
-        let odds = RefitOdds::of(&seasons, years, reference, below_quantile);
-        (Refit::of(&seasons, years, &warming.levels_c, reference), odds)
+        RefitOdds::of(seasons, record_years_in_use, reference, below_quantile)
+    };
+    let refit = |seasons: BasinSeasons| {
+        (Refit::of(&seasons, record_years_in_use, &warming.levels_c, reference), odds_of(&seasons))
     };
     let (refits, refit_odds): (Vec<Refit>, Vec<Option<RefitOdds>>) = of_records.map(refit).unzip();
     let of_sets = match &ready.parameter_sets {
@@ -126,6 +128,8 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
             bands: &ready.basin.bands,
         },
     );
+    let record_odds =
+        odds_of(&study.basin).and_then(|own| RecordOdds::of(&refit_odds, &own, &warming.levels_c, reference));
     let parameter_spread = of_sets
         .and_then(|sets| ParameterSpread::of(&sets, &findings.basin, &warming.levels_c, warming.reference));
     let reference_c = warming.levels_c[warming.reference];
@@ -141,7 +145,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         by_year,
         break_even: Some(break_even).filter(|found| !found.levels.is_empty()),
         parameter_spread,
-        record_odds: RecordOdds::of(&refit_odds, &warming.levels_c, warming.reference),
+        record_odds,
         rule_panel,
         warm_year_biases,
         comparisons,

@@ -60,6 +60,8 @@ pub(super) fn warmed(
         seed: scenario.seed,
     };
     let nodes = run(ready, &plan, questions.changes(), &kept, watch)?;
+    let finer = questions.finer(&nodes);
+    let nodes = if finer.is_empty() { nodes } else { nodes.and(run(ready, &plan, finer, &kept, watch)?) };
     let at = |warming_c: f64, pct: f64| nodes.median(Change { warming_c, precipitation_change_pct: pct });
 
     let known = |level: usize, pct: f64| levels_are_plain.then(|| at(levels_c[level], pct)).flatten();

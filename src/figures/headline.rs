@@ -126,7 +126,7 @@ fn against_spread(
     units: UnitSystem,
 ) -> String {
     match judged(measure.outweighs, measure.outweighs_range) {
-        Judged::Outweighs { level_c, until_c } => {
+        Judged::Outweighs { level_c, until_c, .. } => {
             let until = until_c
                 .map_or_else(|| "on".to_owned(), |until_c| format!("to {}", between_levels(units, until_c)));
             let from = between_levels(units, level_c);
@@ -137,11 +137,18 @@ fn against_spread(
                 format!("from {from} {until}, {subject} outweighs the precipitation spread")
             }
         }
-        Judged::CannotTell { .. } => {
+        Judged::CannotTell { may_cross_at_c, .. } => {
             let up_to = findings.levels_c.last().map_or_else(String::new, |up_to_c| level(units, *up_to_c));
-            format!(
-                "up to {up_to} these realizations cannot tell whether {subject} outweighs the precipitation spread"
-            )
+            match may_cross_at_c {
+                Some(from_c) => format!(
+                    "below {} {subject} does not outweigh the precipitation spread, from there up to {up_to} these realizations \
+                     cannot tell",
+                    between_levels(units, from_c)
+                ),
+                None => format!(
+                    "up to {up_to} these realizations cannot tell whether {subject} outweighs the precipitation spread"
+                ),
+            }
         }
         Judged::DoesNot { up_to_c } => {
             format!("up to {}, {subject} does not outweigh the precipitation spread", level(units, up_to_c))

@@ -5,6 +5,7 @@
 //! deviations, and two percent for the bootstrap.
 
 use super::measure::Asked;
+use super::quantile::{quantile, sorted};
 use super::resample::Resamples;
 use super::surface::{Change, Nodes, SurfaceQuestions};
 use super::tipping::{Asks, Criterion, TippingLevel};
@@ -49,6 +50,15 @@ fn holds(range: Option<CrossingRange>, truth_c: f64) -> bool {
         return false;
     };
     (low..=high).contains(&truth_c)
+}
+
+/// Where a condition that holds at the lower end and not at the upper one ceases to, by halving.
+fn halved([mut low, mut high]: [f64; 2], holds: impl Fn(f64) -> bool) -> f64 {
+    for _ in 0..60 {
+        let middle = f64::midpoint(low, high);
+        if holds(middle) { low = middle } else { high = middle }
+    }
+    f64::midpoint(low, high)
 }
 
 fn held(of: impl Fn(u64) -> bool) -> usize {
@@ -109,12 +119,7 @@ fn the_break_even_precipitation_lies_in_its_range_and_its_node_within_the_error(
     let below_reference = |pct: f64| {
         0.5 * [0.9, 0.8].map(|left| normal(MEAN_MM, left * (1.0 + pct / 100.0))).iter().sum::<f64>()
     };
-    let (mut low, mut high) = (0.0, 40.0);
-    for _ in 0..60 {
-        let middle = f64::midpoint(low, high);
-        if below_reference(middle) > 0.5 { low = middle } else { high = middle }
-    }
-    let truth_pct = f64::midpoint(low, high);
+    let truth_pct = halved([0.0, 40.0], |pct| below_reference(pct) > 0.5);
     let changes_pct = [-20.0, 0.0, 10.0, 15.0, 20.0, 30.0, 40.0];
     let questions = |seed: u64| SurfaceQuestions {
         warmings_c: vec![0.0, 1.0],
@@ -145,7 +150,14 @@ fn the_break_even_precipitation_lies_in_its_range_and_its_node_within_the_error(
             band_swe_mm: Array3::zeros((changes.len(), 0, count)),
         };
         let nodes = Nodes::new(changes, runs, study);
-        let surface = questions.answer(&nodes, &[(0.0, Root::At(0.0)), (1.0, Root::At(truth_pct))], &[]);
+        // What runs would find of this study: the root of its own realizations.
+        let warmed = |pct: f64| {
+            let change = Change { warming_c: 1.0, precipitation_change_pct: pct };
+            quantile(&sorted((0..count).map(|at| value(at, &change))), 0.5)
+        };
+        let reference_mm = quantile(&sorted(reference.iter().copied()), 0.5);
+        let own_pct = halved([-20.0, 40.0], |pct| warmed(pct) < reference_mm);
+        let surface = questions.answer(&nodes, &[(0.0, Root::At(0.0)), (1.0, Root::At(own_pct))], &[]);
         let Some([Some(low), Some(high)]) = surface.break_even[1].range_pct else { continue };
         found += usize::from((low..=high).contains(&truth_pct));
         let warmer = surface

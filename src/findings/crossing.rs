@@ -64,7 +64,12 @@ pub struct CrossingRange {
     pub q05_c: Option<f64>,
     /// 95 % quantile, degC; none where it is not reached.
     pub q95_c: Option<f64>,
+    /// Share of the resamples that cross and fall back at a higher level.
+    pub falls_back_share: f64,
 }
+
+/// Where so many of the resamples fall back, and so many do not, nothing is said of it.
+const OPEN_SHARES: [f64; 2] = [0.05, 0.95];
 
 /// What a crossing and its Monte Carlo range say together.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -75,6 +80,8 @@ pub enum Judged {
         level_c: f64,
         /// Where it falls back, if it does, degC.
         until_c: Option<f64>,
+        /// Whether these realizations cannot tell if it falls back at a higher level.
+        is_open_above: bool,
     },
     /// At no level, in these realizations and in others.
     DoesNot {
@@ -97,8 +104,9 @@ pub enum Judged {
 /// ```
 /// use thawline::findings::{judged, Crossing, CrossingRange, Judged};
 /// let at = Crossing::At { level_c: 3.8, until_c: None };
-/// let both = CrossingRange { q05_c: Some(3.5), q95_c: Some(3.9) };
-/// assert_eq!(judged(at, Some(both)), Judged::Outweighs { level_c: 3.8, until_c: None });
+/// let both = CrossingRange { q05_c: Some(3.5), q95_c: Some(3.9), falls_back_share: 0.0 };
+/// let told = Judged::Outweighs { level_c: 3.8, until_c: None, is_open_above: false };
+/// assert_eq!(judged(at, Some(both)), told);
 /// let open = CrossingRange { q95_c: None, ..both };
 /// let cannot = Judged::CannotTell { crosses_at_c: Some(3.8), may_cross_at_c: Some(3.5) };
 /// assert_eq!(judged(at, Some(open)), cannot);
@@ -107,8 +115,9 @@ pub fn judged(crossing: Crossing, range: Option<CrossingRange>) -> Judged {
     let may_cross_at_c = range.and_then(|range| range.q05_c);
     match (crossing, range) {
         (Crossing::Unknown, _) => Judged::Unknown,
-        (Crossing::At { level_c, until_c }, Some(CrossingRange { q95_c: Some(_), .. })) => {
-            Judged::Outweighs { level_c, until_c }
+        (Crossing::At { level_c, until_c }, Some(CrossingRange { q95_c: Some(_), falls_back_share, .. })) => {
+            let is_open_above = (OPEN_SHARES[0]..OPEN_SHARES[1]).contains(&falls_back_share);
+            Judged::Outweighs { level_c, until_c, is_open_above }
         }
         (Crossing::NotReached { up_to_c }, Some(CrossingRange { q05_c: None, .. })) => {
             Judged::DoesNot { up_to_c }
@@ -133,9 +142,13 @@ pub(super) fn crossing_range(reference_c: f64, ratios: &[(f64, Vec<Option<f64>>)
 
 /// The 5-95 % range of first crossings; nothing where one is unknown or there are none.
 pub(super) fn range_of(crossings: impl Iterator<Item = Crossing>) -> Option<CrossingRange> {
+    let mut falls_back = 0;
     let found = crossings
         .map(|crossing| match crossing {
-            Crossing::At { level_c, .. } => Some(level_c),
+            Crossing::At { level_c, until_c } => {
+                falls_back += usize::from(until_c.is_some());
+                Some(level_c)
+            }
             Crossing::NotReached { .. } => Some(f64::INFINITY),
             Crossing::Unknown => None,
         })
@@ -143,9 +156,10 @@ pub(super) fn range_of(crossings: impl Iterator<Item = Crossing>) -> Option<Cros
     if found.is_empty() {
         return None;
     }
+    let falls_back_share = falls_back as f64 / found.len() as f64;
     let found = sorted(found);
     let reached = |p| Some(quantile(&found, p)).filter(|level_c| level_c.is_finite());
-    Some(CrossingRange { q05_c: reached(0.05), q95_c: reached(0.95) })
+    Some(CrossingRange { q05_c: reached(0.05), q95_c: reached(0.95), falls_back_share })
 }
 
 #[cfg(test)]
@@ -155,7 +169,7 @@ mod tests {
     /// By hand: told where both ends say the same; never of a crossing without a range.
     #[test]
     fn a_crossing_is_judged_by_both_ends_of_its_range() {
-        let range = |q05_c, q95_c| Some(CrossingRange { q05_c, q95_c });
+        let range = |q05_c, q95_c| Some(CrossingRange { q05_c, q95_c, falls_back_share: 0.5 });
         let never = Crossing::NotReached { up_to_c: 4.0 };
         assert_eq!(judged(never, range(None, None)), Judged::DoesNot { up_to_c: 4.0 });
         let may = Judged::CannotTell { crosses_at_c: None, may_cross_at_c: Some(3.9) };
@@ -163,6 +177,9 @@ mod tests {
         let few = |crosses_at_c| Judged::CannotTell { crosses_at_c, may_cross_at_c: None };
         assert_eq!(judged(never, None), few(None));
         assert_eq!(judged(Crossing::At { level_c: 2.0, until_c: None }, None), few(Some(2.0)));
+        let at = Crossing::At { level_c: 2.0, until_c: None };
+        let open = Judged::Outweighs { level_c: 2.0, until_c: None, is_open_above: true };
+        assert_eq!(judged(at, range(Some(1.9), Some(2.1))), open, "half of the resamples fall back");
         assert_eq!(judged(Crossing::Unknown, range(None, None)), Judged::Unknown);
     }
 
@@ -172,6 +189,9 @@ mod tests {
         assert_eq!(crossing_range(0.0, &[(1.0, Vec::new()), (2.0, Vec::new())]), None);
         assert_eq!(crossing_range(0.0, &[(1.0, vec![None; 3]), (2.0, vec![Some(2.0); 3])]), None);
         let never = crossing_range(0.0, &[(1.0, vec![Some(0.5); 3])]);
-        assert_eq!(never, Some(CrossingRange { q05_c: None, q95_c: None }));
+        assert_eq!(never, Some(CrossingRange { q05_c: None, q95_c: None, falls_back_share: 0.0 }));
+        // By hand: at 0.5 degC up, and in one of two down again half-way from 1 to 2 degC.
+        let both = crossing_range(0.0, &[(1.0, vec![Some(2.0); 2]), (2.0, vec![Some(0.0), Some(2.0)])]);
+        assert_eq!(both, Some(CrossingRange { q05_c: Some(0.5), q95_c: Some(0.5), falls_back_share: 0.5 }));
     }
 }

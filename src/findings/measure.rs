@@ -6,7 +6,7 @@ use super::distribution::Distribution;
 use super::driest_and_wettest::DriestAndWettest;
 use super::exceedance::{Exceeded, add_changes, exceeded};
 use super::quantile::{quantile, sorted};
-use super::record_range::RecordRange;
+use super::record_range::{Range, RecordRange, range};
 use super::resample::{Estimate, Ranked, Resamples};
 use super::shift::{Shift, percent_change};
 use super::spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
@@ -68,6 +68,9 @@ pub struct LevelFindings {
     pub percent_change: Option<f64>,
     /// Shift over the half of the reference's 5-95 % precipitation spread that it points to.
     pub signal_to_spread: Option<Estimate>,
+    /// Its 5 and 95 % quantiles over resampled realizations; none where a resample has no ratio.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub signal_to_spread_range: Option<Range>,
     /// Against one standard deviation.
     pub signal_to_noise: Option<SignalToNoise>,
     /// Shares of the period values' sums of squares over reference and level, two-way without replication; not the
@@ -193,6 +196,7 @@ impl Asked<'_> {
             shift: None,
             percent_change: None,
             signal_to_spread: None,
+            signal_to_spread_range: None,
             signal_to_noise: None,
             period_variance_shares: None,
             chances: None,
@@ -226,6 +230,8 @@ impl Asked<'_> {
         found.shift = Some(shift);
         found.percent_change = percent_change(self.measure.kind, median, reference.median);
         found.signal_to_spread = ratio.as_ref().map(|(ratio, _)| *ratio);
+        found.signal_to_spread_range =
+            ratio.as_ref().filter(|(_, of)| !of.is_empty()).and_then(|(_, of)| range(of.iter().copied()));
         found.signal_to_noise = Some(signal_to_noise(&reference.periods, warmed));
         found.period_variance_shares =
             TwoWay::of(&[&reference.periods, warmed]).and_then(|table| table.shares());

@@ -1,93 +1,161 @@
-//! How many degrees of warming an increase of precipitation makes up for: the break-even curve read the other way round.
+//! How many degrees of warming an increase of precipitation makes up for.
 //!
 //! Published for a cold basin as 2.7 to 3.5 degC for 20 % more precipitation, and less where winters are warmer (Rasouli et al.,
 //! preprint).
 
-use super::crossing::{Crossing, CrossingRange};
-use super::surface::CurvePoint;
+use super::crossing::{Crossing, CrossingRange, range_of};
+use super::surface::{Change, Nodes};
 use serde::Serialize;
 
 /// The increase that is asked about, percent.
-const INCREASE_PCT: f64 = 20.0;
+pub(super) const INCREASE_PCT: f64 = 20.0;
+/// Steps into which the warmings of the grid are parted about the one that is looked for.
+const STEPS: usize = 9;
 
 /// The warming at which so much more precipitation just holds the headline measure at its reference.
 #[derive(Debug, Clone, PartialEq, Serialize)]
 pub struct Offset {
     /// The increase, percent.
     pub precipitation_change_pct: f64,
-    /// The warming, as the study's levels count it; linear between the warmings of the surface's grid.
+    /// The warming, as the study's levels count it; linear between runs at ninths of a step of the surface's grid.
     pub warming: Crossing,
-    /// Where the curve's own 5 and 95 % ends meet the increase; an end that the grid does not reach is none.
+    /// Its Monte Carlo range: 5-95 % over resampled realizations, each by the same runs.
     pub range: Option<CrossingRange>,
 }
 
+fn increased(warming_c: f64) -> Change {
+    Change { warming_c, precipitation_change_pct: INCREASE_PCT }
+}
+
+/// Between which warmings of the grid the increase stops making up, parted into steps: what has to be run to know it better. Empty
+/// where it does nowhere.
+pub(super) fn between(nodes: &Nodes, warmings_c: &[f64], reference_c: f64) -> Vec<Change> {
+    let warmings_c: Vec<f64> = warmings_c.iter().copied().filter(|of| *of >= reference_c).collect();
+    let reference = nodes.median(Change { warming_c: reference_c, precipitation_change_pct: 0.0 });
+    let is_made_up =
+        |warming_c: f64| nodes.median(increased(warming_c)).zip(reference).map(|(mm, of)| mm >= of);
+    let passed = warmings_c
+        .windows(2)
+        .find(|ends| [0, 1].map(|end| is_made_up(ends[end])) == [Some(true), Some(false)]);
+    let Some([low, high]) = passed.and_then(|ends| ends.first_chunk::<2>()) else { return Vec::new() };
+    (1..STEPS).map(|step| increased(low + (high - low) * step as f64 / STEPS as f64)).collect()
+}
+
 impl Offset {
-    /// Reads the curve, ascending, upwards from the reference; nothing where it has no warmer point.
-    pub(super) fn of(curve: &[CurvePoint], reference_c: f64) -> Option<Self> {
-        let warmer: Vec<&CurvePoint> = curve.iter().filter(|point| point.warming_c > reference_c).collect();
-        let warmest = warmer.last()?.warming_c;
-        let needed = |number: &dyn Fn(&CurvePoint) -> Option<f64>| {
-            let of_warmer = warmer.iter().map(|point| (point.warming_c, number(point)));
-            first_reached(std::iter::once((reference_c, Some(0.0))).chain(of_warmer))
+    /// Reads every run with the increase, upwards from the reference; nothing where none is warmer.
+    pub(super) fn of(nodes: &Nodes, warmings_c: &[f64], reference_c: f64) -> Option<Self> {
+        let finer = between(nodes, warmings_c, reference_c);
+        let mut column_c: Vec<f64> = warmings_c.iter().copied().filter(|of| *of >= reference_c).collect();
+        column_c.extend(finer.iter().map(|change| change.warming_c));
+        column_c.sort_by(f64::total_cmp);
+        if column_c.len() < 2 {
+            return None;
+        }
+        let reference = Change { warming_c: reference_c, precipitation_change_pct: 0.0 };
+        let crossing = |median: &dyn Fn(Change) -> Option<f64>| {
+            let excess = |warming_c: &f64| Some(median(increased(*warming_c))? - median(reference)?);
+            column_c
+                .iter()
+                .map(excess)
+                .collect::<Option<Vec<f64>>>()
+                .map_or(Crossing::Unknown, |excess| first_below(&column_c, &excess))
         };
-        let warming = needed(&|point| point.precipitation_change_pct);
-        let end = |end: usize| needed(&|point| point.range_pct?[end]).flatten();
+        let resampled: Vec<(Change, Vec<f64>)> = column_c
+            .iter()
+            .map(|warming_c| increased(*warming_c))
+            .chain([reference])
+            .filter_map(|change| Some((change, nodes.resampled_medians(change)?)))
+            .collect();
+        let resamples = resampled.first().map_or(0, |(_, medians)| medians.len());
+        let of_resample = |resample: usize| {
+            crossing(&|change| {
+                let (_, medians) = resampled.iter().find(|(of, _)| *of == change)?;
+                Some(medians[resample])
+            })
+        };
         Some(Self {
             precipitation_change_pct: INCREASE_PCT,
-            // The more precipitation a warming needs, the less warming the increase makes up for.
-            range: matches!(warming, Some(Some(_))).then(|| CrossingRange { q05_c: end(1), q95_c: end(0) }),
-            warming: match warming {
-                Some(Some(level_c)) => Crossing::At { level_c, until_c: None },
-                Some(None) => Crossing::NotReached { up_to_c: warmest },
-                None => Crossing::Unknown,
-            },
+            warming: crossing(&|change| nodes.median(change)),
+            range: range_of((0..resamples).map(of_resample)),
         })
     }
 }
 
-/// The first warming at which the need reaches the increase, by straight lines; `Some(None)` where none does, nothing where one on
-/// the way has no need that was found.
-fn first_reached(points: impl Iterator<Item = (f64, Option<f64>)>) -> Option<Option<f64>> {
-    let mut before: Option<(f64, f64)> = None;
-    for (warming_c, needed_pct) in points {
-        let here = (warming_c, needed_pct?);
-        if let Some(below) = before.filter(|below| below.1 < INCREASE_PCT && here.1 >= INCREASE_PCT) {
-            return Some(Some(below.0 + (here.0 - below.0) * (INCREASE_PCT - below.1) / (here.1 - below.1)));
-        }
-        before = Some(here);
+/// Where an excess first falls below 0, by straight lines; unknown where it lies below from the first on, or is no number.
+fn first_below(warmings_c: &[f64], excess: &[f64]) -> Crossing {
+    if excess.iter().any(|excess| excess.is_nan()) || excess.first().is_none_or(|first| *first < 0.0) {
+        return Crossing::Unknown;
     }
-    Some(None)
+    let ends = warmings_c.windows(2).zip(excess.windows(2));
+    let found = ends.into_iter().find(|(_, excess)| excess[1] < 0.0).map(|(warmings_c, excess)| {
+        warmings_c[0] + (warmings_c[1] - warmings_c[0]) * excess[0] / (excess[0] - excess[1])
+    });
+    match (found, warmings_c.last()) {
+        (Some(level_c), _) => Crossing::At { level_c, until_c: None },
+        (None, Some(up_to_c)) => Crossing::NotReached { up_to_c: *up_to_c },
+        (None, None) => Crossing::Unknown,
+    }
 }
 
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::ensemble::NodeRuns;
+    use crate::season::{Kind, Measure, Place};
+    use ndarray::Array3;
 
-    fn point(warming_c: f64, pct: f64, range_pct: Option<[Option<f64>; 2]>) -> CurvePoint {
-        CurvePoint { warming_c, precipitation_change_pct: Some(pct), stays: None, range_pct }
+    /// Ten realizations of 400 to 490 mm that lose so much at a warming, and gain with precipitation.
+    fn nodes(changes: &[Change], loss: impl Fn(f64) -> f64) -> Nodes {
+        let measure = Measure {
+            name: "swe_04_01_mm".to_owned(),
+            title: "1 April SWE".to_owned(),
+            kind: Kind::AmountMm,
+            place: Place::BandsAndBasin,
+            is_volume: false,
+            has_extremes_told: false,
+        };
+        let value = |change: &Change, at: usize| {
+            (400.0 + 10.0 * at as f64)
+                * (1.0 - loss(change.warming_c))
+                * (1.0 + change.precipitation_change_pct / 100.0)
+        };
+        let runs = NodeRuns {
+            measures: vec![measure],
+            periods: Array3::from_shape_fn((changes.len(), 1, 10), |(node, _, at)| value(&changes[node], at)),
+            survey_swe_mm: Array3::zeros((changes.len(), 10, 0)),
+            band_swe_mm: Array3::zeros((changes.len(), 0, 10)),
+        };
+        Nodes::new(changes.to_vec(), runs, 1)
     }
 
-    /// By hand: 8 % at 1 degC and 32 % at 2 degC are 20 % half-way; an upper end of 12 and 28 half-way too, a lower one of 6 and 26
-    /// 0.7 of the way.
+    fn found(warmings_c: &[f64], loss: impl Fn(f64) -> f64) -> Option<Offset> {
+        let reference = Change { warming_c: 0.0, precipitation_change_pct: 0.0 };
+        let mut changes = vec![reference];
+        changes.extend(warmings_c.iter().map(|warming_c| increased(*warming_c)));
+        let more = between(&nodes(&changes, &loss), warmings_c, 0.0);
+        assert!(more.is_empty() || more.len() == STEPS - 1);
+        changes.extend(more);
+        Offset::of(&nodes(&changes, &loss), warmings_c, 0.0)
+    }
+
+    /// By hand: of a loss w^2/24, 1.2 (1 - w^2/24) is 1 at w = 2; straight lines over ninths of 4 degC miss it by less than
+    /// (4/9)^2/8 * 2/(2 * 2), 0.013 degC, where one line over all 4 would give 1.2/1.8 of 4. All realizations are alike in it, so the range
+    /// is that point.
     #[test]
     fn an_increase_makes_up_for_the_warming_that_needs_it() {
-        let curve = [
-            point(-1.0, -9.0, None),
-            point(0.0, 0.0, None),
-            point(1.0, 8.0, Some([Some(6.0), Some(12.0)])),
-            point(2.0, 32.0, Some([Some(26.0), Some(28.0)])),
-        ];
-        let found = Offset::of(&curve, 0.0).unwrap();
-        assert_eq!(found.warming, Crossing::At { level_c: 1.5, until_c: None });
-        assert_eq!(found.range, Some(CrossingRange { q05_c: Some(1.5), q95_c: Some(1.7) }));
-        let cold = Offset::of(&curve[..3], 0.0).unwrap();
-        assert_eq!((cold.warming, cold.range), (Crossing::NotReached { up_to_c: 1.0 }, None));
-        assert_eq!(Offset::of(&curve[..2], 0.0), None, "nothing is warmer");
-        let lost = [curve[2], CurvePoint { precipitation_change_pct: None, ..curve[3] }];
-        assert_eq!(Offset::of(&lost, 0.0).unwrap().warming, Crossing::Unknown);
-        let beyond = [curve[2], CurvePoint { range_pct: Some([Some(30.0), None]), ..curve[3] }];
-        let open = Offset::of(&beyond, 0.0).unwrap().range.unwrap();
-        assert_eq!(open.q05_c, None);
-        assert!((open.q95_c.unwrap() - (1.0 + 14.0 / 24.0)).abs() < 1e-12);
+        for warmings_c in [vec![0.0, 4.0], vec![-1.0, 0.0, 1.0, 3.0, 4.0]] {
+            let offset = found(&warmings_c, |warming_c| warming_c * warming_c / 24.0).unwrap();
+            let Crossing::At { level_c, .. } = offset.warming else { panic!("{offset:?}") };
+            assert!((level_c - 2.0).abs() < 0.013, "{level_c}");
+            let range = offset.range.unwrap();
+            assert!([range.q05_c, range.q95_c].iter().all(|end| (end.unwrap() - level_c).abs() < 1e-9));
+        }
+    }
+
+    #[test]
+    fn an_increase_may_make_up_for_all_or_there_is_nothing_warmer() {
+        let cold = found(&[0.0, 1.0, 2.0], |warming_c| warming_c / 100.0).unwrap();
+        assert_eq!(cold.warming, Crossing::NotReached { up_to_c: 2.0 });
+        assert_eq!(found(&[-2.0, 0.0], |_| 0.0), None);
     }
 }

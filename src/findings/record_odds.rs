@@ -3,16 +3,16 @@
 
 use super::low_runs::{RUN_YEARS, RUNS_AT_OR_BELOW_QUANTILE, least_limit};
 use super::quantile::{quantile, sorted};
-use super::record_range::{Range, is_telling, range};
+use super::record_range::{Range, is_telling};
 use crate::ensemble::BasinSeasons;
 use crate::season::Kind;
 use ndarray::{ArrayView2, Axis};
 use serde::Serialize;
 
 const METHOD: &str = "q05 and q95: 5 and 95 % quantiles over generators made anew from resampled record years, each with limits \
-                      of its own; the few realizations of each add some Monte Carlo error";
+                      of its own, moved until their median is the study's own number; the few realizations of each add some Monte Carlo error";
 
-/// What one resampled record answers of the headline's single years.
+/// What the runs of one record, the study's own or a resampled one, answer of the headline's single years.
 #[derive(Debug, Clone, PartialEq)]
 pub struct RefitOdds {
     record_years: usize,
@@ -45,7 +45,7 @@ pub struct RecordOdds {
 pub struct RecordOddsLevel {
     /// The level, degC.
     pub level_c: f64,
-    /// Chance of a year below the resampled record's own low-snow limit; years at the limit count half.
+    /// Chance of a year below the resampled record's own low-snow limit.
     pub low_chance: Range,
     /// Over that record's chance at the reference; none where that is nothing in one of them.
     pub chance_ratio: Option<Range>,
@@ -63,7 +63,7 @@ pub struct RecordRuns {
 }
 
 impl RefitOdds {
-    /// Of the runs that one resampled record gave; nothing where its reference has no snow to be low in.
+    /// Of the runs that one record gave; nothing where its reference has no snow to be low in.
     pub fn of(
         seasons: &BasinSeasons,
         record_years: usize,
@@ -74,18 +74,15 @@ impl RefitOdds {
         let headline = seasons.years.index_axis(Axis(1), 0);
         let of_reference = sorted(headline.index_axis(Axis(0), reference).iter().copied());
         let limit = |share| Some(quantile(&of_reference, share)).filter(|mm| *mm > 0.0 && mm.is_finite());
-        let (below_mm, run_mm) = (limit(below_quantile)?, limit(RUNS_AT_OR_BELOW_QUANTILE)?);
+        let (below_mm, run_mm) = (limit(below_quantile)?, limit(RUNS_AT_OR_BELOW_QUANTILE));
         let (_, realizations, years) = headline.dim();
         let each = |of: &dyn Fn(&ArrayView2<'_, f64>) -> f64| -> Vec<f64> {
             headline.axis_iter(Axis(0)).map(|level| of(&level)).collect()
         };
-        // Resampled winters stand at the limit many at a time: ties count half.
         let low = |level: &ArrayView2<'_, f64>| {
-            let count =
-                |is: fn(f64, f64) -> bool| level.iter().filter(|mm| is(**mm, below_mm)).count() as f64;
-            (count(|mm, limit| mm < limit) + count(|mm, limit| mm == limit) / 2.0) / level.len() as f64
+            level.iter().filter(|mm| **mm < below_mm).count() as f64 / level.len() as f64
         };
-        let runs = |run: usize| {
+        let runs = |run: usize, run_mm: f64| {
             each(&|level| {
                 let holds =
                     |row: &ArrayView2<'_, f64>, at: usize| least_limit(&row.row(at).to_vec(), run) <= run_mm;
@@ -97,27 +94,38 @@ impl RefitOdds {
             record_years,
             realizations,
             low: each(&low),
-            runs: lengths.map(|run| (run, runs(run))).collect(),
+            runs: lengths.filter_map(|run| Some((run, runs(run, run_mm?)))).collect(),
         })
     }
 }
 
 impl RecordOdds {
-    /// The ranges over all resampled records; nothing where fewer than two have snow.
-    pub fn of(refits: &[Option<RefitOdds>], levels_c: &[f64], reference: usize) -> Option<Self> {
+    /// The ranges over all resampled records, moved until their median is the study's own number: winters that are drawn again and again
+    /// put a record's quantile, and all that is counted against it, off to one side, which says nothing of the record. Nothing where
+    /// fewer than two have snow, or the study itself has no odds.
+    pub fn of(
+        refits: &[Option<RefitOdds>],
+        own: &RefitOdds,
+        levels_c: &[f64],
+        reference: usize,
+    ) -> Option<Self> {
         let with_snow: Vec<&RefitOdds> = refits.iter().flatten().collect();
         let first = *with_snow.first().filter(|_| with_snow.len() > 1)?;
-        let over = |number: &dyn Fn(&RefitOdds) -> Option<f64>| range(with_snow.iter().map(|of| number(of)));
+        let over = |number: &dyn Fn(&RefitOdds) -> Option<f64>| {
+            Moved::of(with_snow.iter().map(|of| number(of)), number(own)?)
+        };
         let at_level = |(level, level_c): (usize, &f64)| {
             let ratio = |of: &RefitOdds| (of.low[reference] > 0.0).then(|| of.low[level] / of.low[reference]);
-            let runs = first.runs.iter().enumerate().map(|(at, (years, _))| {
-                Some(RecordRuns { years: *years, chance: over(&|of| Some(of.runs[at].1[level]))? })
+            let runs = own.runs.iter().filter_map(|(years, _)| {
+                let chance =
+                    |of: &RefitOdds| of.runs.iter().find(|(of, _)| of == years).map(|(_, of)| of[level]);
+                Some(RecordRuns { years: *years, chance: over(&chance)?.added_within_one() })
             });
             Some(RecordOddsLevel {
                 level_c: *level_c,
-                low_chance: over(&|of| Some(of.low[level]))?,
-                chance_ratio: over(&ratio),
-                runs: runs.collect::<Option<_>>()?,
+                low_chance: over(&|of| Some(of.low[level]))?.added_within_one(),
+                chance_ratio: over(&ratio).and_then(Moved::times),
+                runs: runs.collect(),
             })
         };
         Some(Self {
@@ -133,6 +141,33 @@ impl RecordOdds {
     /// Whether there are years and realizations enough for the ranges to tell of the record.
     pub fn is_telling(&self) -> bool {
         is_telling(self.record_years, self.realizations)
+    }
+}
+
+/// A range with its median, and the number that the median is to be.
+#[derive(Clone, Copy)]
+struct Moved {
+    range: Range,
+    median: f64,
+    own: f64,
+}
+
+impl Moved {
+    /// None where a record has no number.
+    fn of(numbers: impl Iterator<Item = Option<f64>>, own: f64) -> Option<Self> {
+        let numbers = sorted(numbers.collect::<Option<Vec<f64>>>()?);
+        let [q05, median, q95] = [0.05, 0.5, 0.95].map(|share| quantile(&numbers, share));
+        Some(Self { range: Range { q05, q95 }, median, own })
+    }
+
+    /// By a sum, as chances are.
+    fn added_within_one(self) -> Range {
+        self.range.map(|end| (end - self.median + self.own).clamp(0.0, 1.0))
+    }
+
+    /// By a factor, as ratios are; none where the median is 0.
+    fn times(self) -> Option<Range> {
+        (self.median > 0.0).then(|| self.range.map(|end| end * self.own / self.median))
     }
 }
 
@@ -163,22 +198,36 @@ mod tests {
 
     /// By hand. One record's reference 10 to 100 mm by tens, type 8: its 20 % quantile stands at rank 10*0.2 + 1.4/3 = 2.4667, at
     /// 24.67 mm, and 30 % at rank 3.4667, 34.67 mm; 20 mm less puts 4 of 10 below the first. In order they hold two low years
-    /// in a row, and three, at both levels. The other record falls by nothing.
+    /// in a row, and three, at both levels. The other record falls by nothing. Of 0.2 and 0.4 the median is 0.3, which is moved to
+    /// the study's own 0.3: 10 mm less puts 3 of 10 below; of the ratios 1 and 2 it is 1.5, the own one, too.
     #[test]
     fn odds_of_two_records_by_hand() {
         let rising: Vec<f64> = (1..=10).map(|at| 10.0 * f64::from(at)).collect();
-        let less: Vec<f64> = rising.iter().map(|mm| mm - 20.0).collect();
+        let less = |by: f64| -> Vec<f64> { rising.iter().map(|mm| mm - by).collect() };
         let of = |second: &[f64]| RefitOdds::of(&seasons_of(&[&rising, second]), 10, 0, 0.2);
-        let found = RecordOdds::of(&[of(&less), of(&rising), None], &[0.0, 2.0], 0).unwrap();
-        assert_eq!((found.records, found.records_run, found.is_telling()), (2, 3, false));
-        assert_eq!(found.levels[0].low_chance, Range { q05: 0.2, q95: 0.2 });
-        let [low, ratio] = [found.levels[1].low_chance, found.levels[1].chance_ratio.unwrap()];
-        // Two values: type 8 gives the lower one at 5 % and the higher one at 95 %.
-        assert_eq!((low, ratio), (Range { q05: 0.2, q95: 0.4 }, Range { q05: 1.0, q95: 2.0 }));
-        let runs: Vec<_> = found.levels[1].runs.iter().map(|of| (of.years, of.chance)).collect();
-        let always = Range { q05: 1.0, q95: 1.0 };
-        assert_eq!(runs, [(2, always), (3, always), (5, Range { q05: 0.0, q95: 1.0 })]);
-        assert!(RecordOdds::of(&[of(&less), None], &[0.0, 2.0], 0).is_none());
+        let found = |own: f64, refits: &[Option<RefitOdds>]| {
+            RecordOdds::of(refits, &of(&less(own)).unwrap(), &[0.0, 2.0], 0)
+        };
+        let refits = [of(&less(20.0)), of(&rising), None];
+        let two = found(10.0, &refits).unwrap();
+        assert_eq!((two.records, two.records_run, two.is_telling()), (2, 3, false));
+        let near = |range: Range, expected: [f64; 2]| {
+            assert!(
+                (range.q05 - expected[0]).abs() < 1e-12 && (range.q95 - expected[1]).abs() < 1e-12,
+                "{range:?}"
+            );
+        };
+        near(two.levels[0].low_chance, [0.2, 0.2]);
+        near(two.levels[1].low_chance, [0.2, 0.4]);
+        near(two.levels[1].chance_ratio.unwrap(), [1.0, 2.0]);
+        let runs: Vec<_> = two.levels[1].runs.iter().map(|of| of.years).collect();
+        assert_eq!(runs, [2, 3, 5]);
+        near(two.levels[1].runs[0].chance, [1.0, 1.0]);
+        // An own chance of 0.5 moves both ends by 0.2; of ratios by 2.5/1.5.
+        let moved = found(30.0, &refits).unwrap();
+        near(moved.levels[1].low_chance, [0.4, 0.6]);
+        near(moved.levels[1].chance_ratio.unwrap(), [2.5 / 1.5, 5.0 / 1.5]);
+        assert!(found(10.0, &[of(&less(20.0)), None]).is_none());
         let bare = vec![0.0; 10];
         assert!(RefitOdds::of(&seasons_of(&[&bare, &bare]), 10, 0, 0.2).is_none());
     }

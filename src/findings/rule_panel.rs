@@ -166,7 +166,7 @@ impl RulePanel {
             peak_tolerance_pct: PEAK_TOLERANCE_PCT,
             melt_out_tolerance_days: MELT_OUT_TOLERANCE_DAYS,
             factor_bounds: FACTOR_BOUNDS,
-            interval: "1.645 Monte Carlo errors either way; the error is the standard deviation over 400 resamples of whole realizations",
+            interval: "5 and 95 % quantiles of the ratio over 400 resamples of whole realizations",
             alternatives: runs.len() - 1,
             alternatives_tuned: is_tuned[1..].iter().filter(|is_tuned| **is_tuned).count(),
             rules: runs.iter().map(|runs| runs.rule).collect(),
@@ -193,7 +193,7 @@ impl OfRule {
                     shift: level.shift,
                     percent_change: level.percent_change,
                     signal_to_spread: level.signal_to_spread,
-                    weight: Weight::of(level.signal_to_spread),
+                    weight: Weight::of(level.signal_to_spread, level.signal_to_spread_range),
                 })
                 .collect(),
         }

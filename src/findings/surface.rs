@@ -3,7 +3,7 @@
 
 use super::break_even::{Root, Stays};
 use super::elasticity::Slopes;
-use super::offset::Offset;
+use super::offset::{INCREASE_PCT, Offset, between};
 use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Ranked, Resamples};
 use super::tipping::{Criterion, FailureLine};
@@ -144,8 +144,8 @@ pub struct CurvePoint {
     pub precipitation_change_pct: Option<f64>,
     /// Where there is none: on which side it stays, from -50 to +100 %.
     pub stays: Option<Stays>,
-    /// Its 5 and 95 % quantiles over resampled realizations, percent, by straight lines between the nodes of the grid; an end is
-    /// none where it lies beyond the grid.
+    /// Its 5 and 95 % quantiles over resampled realizations, percent, by straight lines between the nodes of the grid, moved by what
+    /// these miss of the root that runs have found; an end is none where it lies beyond the grid.
     pub range_pct: Option<[Option<f64>; 2]>,
 }
 
@@ -175,11 +175,17 @@ impl SurfaceQuestions<'_> {
             .warmings_c
             .iter()
             .flat_map(|warming_c| self.precipitation_changes_pct.iter().map(|pct| at(*warming_c, *pct)));
+        let increased = self
+            .warmings_c
+            .iter()
+            .filter(|warming_c| **warming_c >= self.reference_c)
+            .map(|warming_c| at(*warming_c, INCREASE_PCT));
         let slopes = self.levels_c.iter().flat_map(|level_c| Slopes::changes(*level_c, self.reference_c));
         let all = std::iter::once(at(self.reference_c, 0.0))
             .chain(grid)
             .chain(self.named.iter().map(|named| named.change))
-            .chain(slopes);
+            .chain(slopes)
+            .chain(increased);
         let mut changes: Vec<Change> = Vec::new();
         for change in all {
             if !changes.contains(&change) {
@@ -187,6 +193,14 @@ impl SurfaceQuestions<'_> {
             }
         }
         changes
+    }
+
+    /// What has to be run when the grid has been, to know better which warming an increase of precipitation makes up for; after the
+    /// reference, which decides about perennial snow.
+    pub fn finer(&self, nodes: &Nodes) -> Vec<Change> {
+        let reference = Change { warming_c: self.reference_c, precipitation_change_pct: 0.0 };
+        let finer = between(nodes, &self.warmings_c, self.reference_c);
+        if finer.is_empty() { finer } else { std::iter::once(reference).chain(finer).collect() }
     }
 
     /// Answers from the nodes; the curve, found by runs of its own, is added to it.
@@ -213,7 +227,7 @@ impl SurfaceQuestions<'_> {
             measures: shown.iter().map(|at| nodes.runs.measures[*at].clone()).collect(),
             nodes: self.warmings_c.iter().copied().flat_map(grid).filter_map(node).collect(),
             named: named.collect(),
-            offset: Offset::of(&break_even, self.reference_c),
+            offset: Offset::of(nodes, &self.warmings_c, self.reference_c),
             break_even,
             failure_lines: self.criteria.iter().filter_map(|of| FailureLine::of(of, nodes, self)).collect(),
             slopes: self.levels_c.iter().map(|level_c| Slopes::of(nodes, *level_c, self)).collect(),
@@ -229,12 +243,22 @@ impl SurfaceQuestions<'_> {
         };
         // At the reference it is none by definition, without an error.
         let is_found = precipitation_change_pct.filter(|_| warming_c != self.reference_c);
-        let range_pct = is_found.and_then(|_| self.range_pct(nodes, warming_c));
+        let range_pct = is_found.and_then(|pct| self.range_pct(nodes, warming_c, pct));
         CurvePoint { warming_c, precipitation_change_pct, stays, range_pct }
     }
 
-    /// The break-even of every resample by straight lines between the grid's nodes.
-    fn range_pct(&self, nodes: &Nodes, warming_c: f64) -> Option<[Option<f64>; 2]> {
+    /// The break-even of every resample by straight lines between the grid's nodes, all moved by what the same lines miss of the root
+    /// that runs have found.
+    fn range_pct(&self, nodes: &Nodes, warming_c: f64, root_pct: f64) -> Option<[Option<f64>; 2]> {
+        let medians = |pct: f64| nodes.median(Change { warming_c, precipitation_change_pct: pct });
+        let reference_mm =
+            nodes.median(Change { warming_c: self.reference_c, precipitation_change_pct: 0.0 })?;
+        let excess: Option<Vec<f64>> =
+            self.precipitation_changes_pct.iter().map(|pct| Some(medians(*pct)? - reference_mm)).collect();
+        let by_lines_pct = root_between(&self.precipitation_changes_pct, &excess?)?;
+        if !by_lines_pct.is_finite() {
+            return None;
+        }
         let at = |warming_c, precipitation_change_pct| {
             nodes.resampled_medians(Change { warming_c, precipitation_change_pct })
         };
@@ -245,7 +269,7 @@ impl SurfaceQuestions<'_> {
         let roots: Option<Vec<f64>> = (0..reference.len())
             .map(|resample| {
                 let excess: Vec<f64> = column.iter().map(|of| of[resample] - reference[resample]).collect();
-                root_between(&self.precipitation_changes_pct, &excess)
+                Some(root_between(&self.precipitation_changes_pct, &excess)? + root_pct - by_lines_pct)
             })
             .collect();
         let roots = sorted(roots.filter(|roots| !roots.is_empty())?);
@@ -310,7 +334,14 @@ impl Nodes {
         &self.resamples
     }
 
-    fn resampled_medians(&self, change: Change) -> Option<Vec<f64>> {
+    /// The same runs and those of other changes; both begin with the reference.
+    #[must_use]
+    pub fn and(self, other: Self) -> Self {
+        let changes = self.changes.into_iter().chain(other.changes.into_iter().skip(1)).collect();
+        Self { changes, runs: self.runs.and(&other.runs), resamples: self.resamples }
+    }
+
+    pub(super) fn resampled_medians(&self, change: Change) -> Option<Vec<f64>> {
         let ranked = Ranked::new(self.of_basin(change)?.into_iter().zip(0..));
         let median = |weights: &[u32]| ranked.quantiles(weights, [0.5]).map_or(f64::NAN, |[median]| median);
         Some(self.resamples.each(median))

@@ -151,26 +151,9 @@ impl TippingLevel {
         let levels = of_each.unwrap_or_default();
         let warmer = || reference + 1..levels_c.len();
         let first_failure = |value: &dyn Fn(usize) -> Option<f64>| {
-            let mut below = (levels_c[reference], value(reference).map(|value| asks.margin(value)));
-            for level in warmer() {
-                let (Some(before), Some(margin)) = (below.1, value(level).map(|value| asks.margin(value)))
-                else {
-                    return Crossing::Unknown;
-                };
-                if before < 0.0 {
-                    return Crossing::At { level_c: below.0, until_c: None };
-                }
-                if margin < 0.0 {
-                    let share = before / (before - margin);
-                    let level_c = below.0 + share * (levels_c[level] - below.0);
-                    return Crossing::At { level_c, until_c: None };
-                }
-                below = (levels_c[level], Some(margin));
-            }
-            match warmer().next_back() {
-                Some(highest) => Crossing::NotReached { up_to_c: levels_c[highest] },
-                None => Crossing::Unknown,
-            }
+            let margin = |level: usize| value(level).map(|value| asks.margin(value));
+            let margins: Option<Vec<f64>> = std::iter::once(reference).chain(warmer()).map(margin).collect();
+            margins.map_or(Crossing::Unknown, |margins| failing(&levels_c[reference..], &margins))
         };
         let fails = first_failure(&|level| Some(levels.get(level)?.value.value));
         let of_resamples = (0..resampled[reference].len())
@@ -189,6 +172,28 @@ impl TippingLevel {
             fails,
             fails_range: range_of(of_resamples).filter(|_| !levels.is_empty()),
             levels,
+        }
+    }
+}
+
+/// Where a margin first falls below 0, scanning up from the reference, and where it is first back, linear between levels; at the
+/// reference where it lies below there.
+fn failing(levels_c: &[f64], margins: &[f64]) -> Crossing {
+    let ([_, .., highest], [at_reference, ..]) = (levels_c, margins) else { return Crossing::Unknown };
+    let passes = |fails: bool| {
+        let ends = levels_c.windows(2).zip(margins.windows(2)).enumerate();
+        let passing =
+            move |(_, (_, of)): &(usize, (&[f64], &[f64]))| (of[0] < 0.0) != fails && (of[1] < 0.0) == fails;
+        ends.filter(passing).map(|(at, (levels_c, of))| {
+            (at, levels_c[0] + of[0] / (of[0] - of[1]) * (levels_c[1] - levels_c[0]))
+        })
+    };
+    let first = if *at_reference < 0.0 { Some((0, levels_c[0])) } else { passes(true).next() };
+    match first {
+        None => Crossing::NotReached { up_to_c: *highest },
+        Some((from, level_c)) => {
+            let back = passes(false).find(|(at, _)| *at >= from).map(|(_, back_c)| back_c);
+            Crossing::At { level_c, until_c: back }
         }
     }
 }
@@ -232,7 +237,8 @@ mod tests {
         let at_least = |swe_mm: f64| asked(Asks::MedianAtLeast { swe_mm, volume_hm3: None }, &LEVELS);
         let found = at_least(120.0);
         assert_eq!(found.fails, Crossing::At { level_c: 1.5, until_c: None });
-        assert_eq!(found.fails_range, Some(CrossingRange { q05_c: Some(1.5), q95_c: Some(1.5) }));
+        let range = CrossingRange { q05_c: Some(1.5), q95_c: Some(1.5), falls_back_share: 0.0 };
+        assert_eq!(found.fails_range, Some(range));
         assert_eq!(found.levels.iter().map(|level| level.holds).collect::<Vec<_>>(), [true, true, false]);
         assert_eq!(
             at_least(80.0).fails,
@@ -248,6 +254,12 @@ mod tests {
         let already = at_least(201.0);
         assert_eq!(already.holds_at_reference, Some(false));
         assert_eq!(already.fails, Crossing::At { level_c: 0.0, until_c: None });
+        // Back at 120 half-way from 80 to 160.
+        let back = asked(
+            Asks::MedianAtLeast { swe_mm: 120.0, volume_hm3: None },
+            &[[200.0; 4], [160.0; 4], [80.0; 4], [160.0; 4]],
+        );
+        assert_eq!(back.fails, Crossing::At { level_c: 1.5, until_c: Some(2.5) });
         let alone = asked(Asks::MedianAtLeast { swe_mm: 1.0, volume_hm3: None }, &LEVELS[..1]);
         assert_eq!(alone.fails, Crossing::Unknown);
     }

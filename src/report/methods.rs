@@ -1,18 +1,31 @@
-//! How the intervals of `summary.json` are made: one text a kind, found by the names of its keys.
+//! How the intervals of `summary.json` are made: one text a kind, found by the names of keys on the way to it.
 
 use serde::Serialize;
+
+/// All kinds, and how to find the one of an interval.
+#[derive(Debug, Clone, Copy, Serialize)]
+pub(super) struct Methods {
+    how_to_find: &'static str,
+    kinds: &'static [Method],
+}
 
 /// One kind of interval.
 #[derive(Debug, Clone, Copy, Serialize)]
 pub(super) struct Method {
-    /// Keys, of which one stands on the way to every interval of the kind.
+    /// Keys, or several in a row with dots between, of which one stands on the way to every interval of the kind.
     keys: &'static [&'static str],
     /// What its ends are, of what, and how they are found.
     says: &'static str,
 }
 
 /// Every kind. Resamples draw whole realizations again, with replacement, from the study's seed; the same draws for all numbers.
-pub(super) const METHODS: &[Method] = &[
+pub(super) const METHODS: Methods = Methods {
+    how_to_find: "of the kinds with a key on the way to an interval, the one whose key ends nearest to it, and of these the longest; \
+                  an object with value, q05 and q95 counts as a key of that name just before its ends",
+    kinds: KINDS,
+};
+
+const KINDS: &[Method] = &[
     Method {
         keys: &["monte_carlo_error"],
         says: "one standard deviation over 400 resamples of whole realizations (bootstrap), over 40 of them for bands, \
@@ -25,20 +38,21 @@ pub(super) const METHODS: &[Method] = &[
                bootstrap); none where a resample has no number",
     },
     Method {
-        keys: &["outweighs_range", "fails_range", "leaves_spread_range"],
+        keys: &["outweighs_range", "fails_range", "leaves_spread_range", "offset"],
         says: "5 and 95 % quantiles of the first crossing over resamples of whole realizations; an end is none where it is not reached \
-               up to the highest level",
+               up to the highest level; falls_back_share is the share of resamples that fall back above",
     },
     Method {
-        keys: &["surface"],
-        says: "range_pct of break_even: 5 and 95 % quantiles over 400 resamples of the precipitation at which the resampled median is \
-               back at the resampled reference, by straight lines between the grid's nodes; an end is none beyond the grid. range of \
-               offset: where these ends meet the increase. The values themselves are roots found on runs to 0.01 %",
+        keys: &["break_even.range_pct"],
+        says: "5 and 95 % quantiles over 400 resamples of the precipitation at which the resampled median is back at the resampled \
+               reference, by straight lines between the grid's nodes, moved by what these miss of the value, which is a root found on runs \
+               to 0.01 %; an end is none beyond the grid",
     },
     Method {
-        keys: &["record_range", "record_odds"],
+        keys: &["record_range", "record_range.levels.shift", "record_range.outweighs", "record_odds"],
         says: "5 and 95 % quantiles over generators made anew from 20 resampled records, the record's own uncertainty; the few \
-               realizations of each add some Monte Carlo error",
+               realizations of each add some Monte Carlo error. Under record_odds they are moved together until their median is the \
+               study's own number",
     },
     Method {
         keys: &["bound"],
@@ -80,7 +94,7 @@ pub(super) const METHODS: &[Method] = &[
             "volume_share_resampled",
             "crossover",
         ],
-        says: "5 and 95 % quantiles over 400 resamples of whole realizations; an end is none where it lies outside the bands",
+        says: "5 and 95 % quantiles over 400 resamples of whole realizations; of an elevation an end is none where it lies outside the bands",
     },
     Method {
         keys: &["generator"],

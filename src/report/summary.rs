@@ -3,7 +3,7 @@
 use super::SCHEMA_VERSION;
 use super::answer::Answer;
 use super::json::lines;
-use super::methods::{METHODS, Method};
+use super::methods::{METHODS, Methods};
 use super::study::{FittedFrom, Input, Origin, SetsFrom, Study};
 use crate::baseline::{Baseline, BaselineYears, Detrended};
 use crate::basin::BeyondStations;
@@ -25,7 +25,7 @@ struct Summary<'a> {
     units: UnitsSaid,
     answer: &'a Answer,
     quantiles: &'static str,
-    methods: &'static [Method],
+    methods: Methods,
     season: &'a SeasonSettings,
     basin: BasinSummary,
     record: RecordSummary<'a>,

@@ -2,12 +2,10 @@
 
 use super::super::crossing::Judged;
 use super::super::quantile::sorted;
+use super::super::record_range::Range;
 use super::super::resample::Estimate;
 use super::{LevelOfRule, OfRule};
 use serde::Serialize;
-
-/// A ratio this many Monte Carlo errors from 1 or nearer tells nothing: the ends of a 90 % interval of a normal.
-const ERRORS: f64 = 1.645;
 
 /// Whether a shift outweighs a spread.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
@@ -17,9 +15,9 @@ pub enum Weight {
     Outweighs,
     /// It does not.
     DoesNotOutweigh,
-    /// The ratio's interval holds 1.
+    /// The ratio's 5-95 % Monte Carlo range holds 1.
     CannotTell,
-    /// There is no ratio, or no error of it.
+    /// There is no ratio, or no range of it.
     NoRatio,
 }
 
@@ -71,14 +69,13 @@ pub struct LevelOverRules {
 }
 
 impl Weight {
-    pub(super) fn of(ratio: Option<Estimate>) -> Self {
-        let Some(Estimate { value, monte_carlo_error: Some(error) }) = ratio else { return Self::NoRatio };
-        if value - ERRORS * error > 1.0 {
-            Self::Outweighs
-        } else if value + ERRORS * error < 1.0 {
-            Self::DoesNotOutweigh
-        } else {
-            Self::CannotTell
+    /// Of a ratio by its range over resampled realizations.
+    pub fn of(ratio: Option<Estimate>, range: Option<Range>) -> Self {
+        match ratio.and(range) {
+            None => Self::NoRatio,
+            Some(range) if range.q05 > 1.0 => Self::Outweighs,
+            Some(range) if range.q95 < 1.0 => Self::DoesNotOutweigh,
+            Some(_) => Self::CannotTell,
         }
     }
 }
@@ -179,24 +176,28 @@ mod tests {
             pairs: 40,
             pairs_without_value: 0,
         });
-        let weight = Weight::of(signal_to_spread);
+        let range = ratio
+            .and_then(|(value, error)| error.map(|error| Range { q05: value - error, q95: value + error }));
+        let weight = Weight::of(signal_to_spread, range);
         let level = LevelOfRule { level_c: 2.0, shift, percent_change: None, signal_to_spread, weight };
         OfRule {
             precipitation_spread: None,
             outweighs,
-            outweighs_range: Some(CrossingRange { q05_c, q95_c }),
+            outweighs_range: Some(CrossingRange { q05_c, q95_c, falls_back_share: 0.0 }),
             levels: vec![level],
         }
     }
 
-    /// By hand: 1.1 ± 0.1 lies within 1.645 errors of 1, 1.2 ± 0.1 and 0.8 ± 0.1 do not.
+    /// By hand, of ranges above 1, below it, about it, and none.
     #[test]
     fn a_ratio_says_one_of_four_things() {
-        let says = |value, monte_carlo_error| Weight::of(Some(Estimate { value, monte_carlo_error }));
-        assert_eq!(says(1.2, Some(0.1)), Weight::Outweighs);
-        assert_eq!(says(0.8, Some(0.1)), Weight::DoesNotOutweigh);
-        assert_eq!(says(1.1, Some(0.1)), Weight::CannotTell);
-        assert_eq!([says(1.2, None), Weight::of(None)], [Weight::NoRatio; 2]);
+        let ratio = Some(Estimate { value: 1.1, monte_carlo_error: Some(0.1) });
+        let says = |q05, q95| Weight::of(ratio, Some(Range { q05, q95 }));
+        assert_eq!(says(1.01, 1.3), Weight::Outweighs);
+        assert_eq!(says(0.8, 0.99), Weight::DoesNotOutweigh);
+        assert_eq!(says(0.95, 1.3), Weight::CannotTell);
+        let range = Some(Range { q05: 2.0, q95: 3.0 });
+        assert_eq!([Weight::of(ratio, None), Weight::of(None, range)], [Weight::NoRatio; 2]);
     }
 
     /// By hand: the study's own rules cannot tell, since others of their realizations might not reach it; one rule says yes, one no,

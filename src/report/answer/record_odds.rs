@@ -24,17 +24,13 @@ pub(super) fn record_odds(findings: &Findings, reader: Reader) -> Option<String>
             percent(run.chance)
         )
     });
-    let own = findings.by_year.as_ref().and_then(|by_year| by_year.low_snow.as_ref());
-    let own = own.and_then(|own| own.levels.iter().find(|own| own.level_c == level.level_c));
-    let own = own
-        .map_or(String::new(), |own| format!(" (from this record {} %)", fixed(100.0 * own.chance.value, 0)));
     let snowless = match found.records_run - found.records {
         0 => String::new(),
         count => format!("; {count} more had no snow to be low in"),
     };
     Some(format!(
-        "Another record of the same kind would put low-snow years at {} at {} of all{own}{times}{runs} (5–95 % of {} resampled records, {} \
-         realizations of each, each with its own limits{snowless}): the range of having only this record, which more realizations would not \
+        "Another record of the same kind would put low-snow years at {} at {} of all{times}{runs} (5–95 % of {} resampled records, {} \
+         realizations of each, each with its own limits, moved about this study's own numbers{snowless}): the range of having only this record, which more realizations would not \
          narrow.",
         reader.level(level.level_c),
         percent(level.low_chance),

@@ -41,16 +41,26 @@ fn one(findings: &Findings, of: &TippingLevel, cause: &str, reader: Reader) -> S
         }
     }
     match of.fails {
-        Crossing::At { level_c, .. } => {
+        Crossing::At { level_c, until_c } => {
+            let back = until_c.map_or(String::new(), |until_c| {
+                format!(
+                    "; at a higher level, from about {} on, it holds again",
+                    reader.between_levels(until_c)
+                )
+            });
             let range = match of.fails_range {
                 None => " in these realizations, too few to say what others would have".to_owned(),
                 range => crossing_range(findings, range, reader),
             };
             format!(
-                "{name} ({asked}) begins to fail at about {} of {cause}{range}.",
+                "{name} ({asked}) begins to fail at about {} of {cause}{range}{back}.",
                 reader.between_levels(level_c)
             )
         }
+        Crossing::NotReached { up_to_c } if of.fails_range.is_none() => format!(
+            "{name} ({asked}) holds up to {} of {cause} in these realizations, too few to say what others would have.",
+            reader.level(up_to_c)
+        ),
         Crossing::NotReached { up_to_c } => {
             let may_fail = of.fails_range.and_then(|range| range.q05_c).map_or(String::new(), |level_c| {
                 format!(

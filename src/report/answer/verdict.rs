@@ -3,10 +3,7 @@
 use super::super::numbers::{fixed, signed};
 use super::super::reader::Reader;
 use super::{is_scarce, period_name};
-use crate::findings::{CrossingRange, Findings, Judged, LevelFindings, MeasureFindings, judged};
-
-/// So many standard errors to either side hold 90 % of a normal distribution.
-const OF_90_PCT: f64 = 1.645;
+use crate::findings::{CrossingRange, Findings, Judged, LevelFindings, MeasureFindings, Weight, judged};
 
 /// Does warming outweigh the precipitation spread, and from where on?
 pub(super) fn verdict(
@@ -24,7 +21,7 @@ pub(super) fn verdict(
         );
     }
     match judged(headline.outweighs, headline.outweighs_range) {
-        Judged::Outweighs { level_c, until_c } => {
+        Judged::Outweighs { level_c, until_c, is_open_above } => {
             let range = crossing_range(findings, headline.outweighs_range, reader);
             let from = reader.between_levels(level_c);
             let (span, elsewhere) = match until_c {
@@ -34,9 +31,14 @@ pub(super) fn verdict(
                     "elsewhere",
                 ),
             };
+            let open = if is_open_above {
+                " Whether it still does at the highest levels, these realizations cannot tell."
+            } else {
+                ""
+            };
             format!(
                 "{span}, the {cause} outweighs the precipitation spread of the {name}; {elsewhere}, precipitation outweighs \
-                 the {cause}."
+                 the {cause}.{open}"
             )
         }
         Judged::DoesNot { up_to_c } => format!(
@@ -47,33 +49,38 @@ pub(super) fn verdict(
         ),
         Judged::CannotTell { crosses_at_c, may_cross_at_c } => {
             let up_to = findings.levels_c.last().map_or_else(String::new, |level_c| reader.level(*level_c));
-            let cannot = format!(
-                "p to {up_to} these realizations cannot tell whether {cause} outweighs the precipitation spread of the {name}{}",
-                highest_ratio(headline, reader)
-            );
             let at = |at_c: f64| reader.between_levels(at_c);
-            match (crosses_at_c, may_cross_at_c) {
-                (_, None) => {
-                    format!("U{cannot}; they are too few to say what others of the same kind would tell.")
+            let below = may_cross_at_c.map_or(String::new(), |from_c| {
+                format!("Below about {} of warming, precipitation outweighs the {cause}. ", at(from_c))
+            });
+            let from = if below.is_empty() { "Up" } else { "From there up" };
+            let others = match (crosses_at_c, may_cross_at_c) {
+                (_, None) => "they are too few to say what others of the same kind would tell".to_owned(),
+                (None, Some(_)) => {
+                    "in these it does not, others of the same kind might have it outweigh".to_owned()
                 }
-                (None, Some(from_c)) => {
-                    format!(
-                        "U{cannot}; others of the same kind might have it outweigh from about {} on.",
-                        at(from_c)
-                    )
-                }
-                (Some(at_c), Some(from_c)) => format!(
-                    "Below about {} of warming, precipitation outweighs the {cause}. From there u{cannot}; they have it outweigh from \
-                     about {} on, others of the same kind might at no level.",
-                    at(from_c),
+                (Some(at_c), Some(_)) => format!(
+                    "they have it outweigh from about {} on, others of the same kind might at no level",
                     at(at_c)
                 ),
-            }
+            };
+            format!(
+                "{below}{from} to {up_to} these realizations cannot tell whether {cause} outweighs the precipitation spread of the {name}{}; {others}.",
+                highest_ratio(headline, reader)
+            )
         }
-        Judged::Unknown => format!(
-            "Whether {cause} outweighs the precipitation spread of the {name} cannot be said from this study: there is \
-             no level above the reference, too few realizations, or a reference that does not spread."
-        ),
+        Judged::Unknown => {
+            let why = if findings.reference + 1 == findings.levels_c.len() {
+                "there is no level above the reference"
+            } else if findings.realizations < 2 {
+                "a single realization has no spread"
+            } else {
+                "the reference does not spread"
+            };
+            format!(
+                "Whether {cause} outweighs the precipitation spread of the {name} cannot be said from this study: {why}."
+            )
+        }
     }
 }
 
@@ -94,7 +101,7 @@ pub(super) fn crossing_range(findings: &Findings, range: Option<CrossingRange>, 
         None => format!("above {}", reader.between_levels_bare(highest)),
     };
     match range {
-        Some(CrossingRange { q05_c, q95_c }) if words(q05_c) != words(q95_c) => {
+        Some(CrossingRange { q05_c, q95_c, .. }) if words(q05_c) != words(q95_c) => {
             format!(" (Monte Carlo range {} to {})", words(q05_c), words(q95_c))
         }
         _ => String::new(),
@@ -120,13 +127,11 @@ pub(super) fn how_much(
     let percent = at.percent_change.map_or(String::new(), |percent| format!(" ({} %)", signed(percent, 0)));
     let ratio = at.signal_to_spread.map_or(String::new(), |ratio| {
         let error = ratio.monte_carlo_error.map_or(String::new(), |error| format!(" ± {}", fixed(error, 2)));
-        let so = match (ratio.monte_carlo_error, ratio.value > 1.0) {
-            (None, _) => "of realizations too few to tell whether it outweighs it",
-            (Some(error), _) if (ratio.value - 1.0).abs() < OF_90_PCT * error => {
-                "so near 1 that these realizations cannot tell whether it outweighs it"
-            }
-            (_, true) => "so it outweighs it",
-            (_, false) => "so it does not outweigh it",
+        let so = match Weight::of(Some(ratio), at.signal_to_spread_range) {
+            Weight::NoRatio => "of realizations too few to tell whether it outweighs it",
+            Weight::CannotTell => "so near 1 that these realizations cannot tell whether it outweighs it",
+            Weight::Outweighs => "so it outweighs it",
+            Weight::DoesNotOutweigh => "so it does not outweigh it",
         };
         format!("; that is {}{error} times the half spread, {so}", fixed(ratio.value, 2))
     });

@@ -28,10 +28,6 @@ pub(super) fn yardstick(
         reader.amount(spread.q05),
         reader.amount(spread.q95)
     )];
-    // Realizations too few for a verdict have none by another yardstick either.
-    if headline.outweighs_range.is_none() {
-        return words;
-    }
     let Some(study) = headline.yardsticks.iter().filter(own).find(|of| of.times_assumed == 1.0) else {
         return words;
     };
@@ -41,6 +37,7 @@ pub(super) fn yardstick(
             .iter()
             .filter(own)
             .filter(|of| of.times_assumed != 1.0 && can_be_told(of.outweighs))
+            .filter(|_| headline.outweighs_range.is_some())
             .map(|of| format!("{} {}", from_where_on(of.outweighs, reader), of_assumption(of)))
             .collect();
         let others = match others.as_slice() {
@@ -56,6 +53,10 @@ pub(super) fn yardstick(
         "No change of mean precipitation is assumed: the spread holds only the order and choice of the record's own years."
             .to_owned()
     });
+    // Realizations too few for a verdict have none by another yardstick either.
+    if headline.outweighs_range.is_none() {
+        return words;
+    }
     let periods = headline.yardsticks.iter().filter(|of| of.times_assumed == 1.0 && !own(of));
     let periods = periods.filter(|of| can_be_told(of.outweighs));
     let periods: Vec<String> = periods

@@ -107,7 +107,7 @@ fn cell(level: &LevelOfRule, kind: Kind, reader: Reader) -> String {
 fn from_where(found: &OfRule, reader: Reader) -> String {
     let range = ends_in_words(found, reader).map_or(String::new(), |range| format!(" ({range})"));
     match found.judged() {
-        Judged::Outweighs { level_c, until_c } => {
+        Judged::Outweighs { level_c, until_c, .. } => {
             let until = until_c.map(|until_c| format!(", until {}", reader.between_levels_bare(until_c)));
             format!("{}{range}{}", reader.between_levels(level_c), until.unwrap_or_default())
         }
