@@ -92,7 +92,7 @@ fn the_title_says_from_where_and_what_hangs_on_the_rule() {
     let title =
         |loss_mm, is_tuned| drawn(&with_panel(&PLAIN, loss_mm, is_tuned), UnitSystem::Metric).unwrap().title;
     let clear = title(-100.0, true);
-    let expected = "it outweighs the precipitation spread from +0.5 °C to +1.0 °C on under every rule";
+    let expected = "it outweighs the precipitation spread from +0.5 °C to +1 °C on under every rule";
     assert!(clear.ends_with(expected), "{clear}");
     let turned = title(-17.0, true);
     assert!(
