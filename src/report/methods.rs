@@ -88,6 +88,7 @@ const KINDS: &[Method] = &[
     },
     Method {
         keys: &[
+            "signal_to_spread_range",
             "snow_line_resampled",
             "snow_line_rise_resampled_m_per_c",
             "volume_resampled_hm3",

@@ -309,3 +309,25 @@ fn precipitation_makes_up_for_more_warming_where_winters_are_cold() {
     assert!((1.0..10.0).contains(&cold), "{cold}");
     assert!(warm < cold, "{warm} against {cold}");
 }
+
+/// A grid too coarse for its straight lines still has every break-even inside its own range, and the warming that an increase makes up
+/// for where finer warmings put it: to a twentieth of a degree, a hundredth of what the chord over 4 degC misses.
+#[test]
+fn a_coarse_grid_tells_the_same() {
+    let surface = |grid: &str| {
+        let basin = demo(&format!("\n[findings.surface]\n{grid}\n"));
+        exchange(&basin, "count = 12\n", "count = 60\n");
+        findings(&basin, "--into out")["surface"].clone()
+    };
+    let coarse = surface("warming_c = [0, 4]\nprecipitation_change_pct = [-50, 0, 100]");
+    let fine = surface("warming_c = [0, 0.5, 1, 1.5, 2, 4]\nprecipitation_change_pct = [-20, 0, 100]");
+    let curve = coarse["break_even"].as_array().unwrap();
+    let point = curve.last().unwrap();
+    let value = point["precipitation_change_pct"].as_f64().unwrap();
+    let [low, high] = [0, 1].map(|end| point["range_pct"][end].as_f64().unwrap());
+    assert!(low < value && value < high, "{point}");
+    let [coarse_c, fine_c] = [&coarse, &fine].map(|of| of["offset"]["warming"]["level_c"].as_f64().unwrap());
+    assert!((coarse_c - fine_c).abs() < 0.05, "{coarse_c} and {fine_c}");
+    let range = &coarse["offset"]["range"];
+    assert!(range["q05_c"].as_f64().unwrap() < coarse_c && range["q95_c"].as_f64().unwrap() > coarse_c);
+}
