@@ -33,8 +33,8 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let said = Said {
         ensemble: format!("{}.{}", ensemble(findings), shown.in_words(findings, setting.units)),
         key: format!(
-            "Bars: share of single years, in 10 years, with a line of two Monte Carlo errors; dashed: a quarter of years. Low snow: below {} % of the \
-             reference's single years of {}; none where there are no such years.",
+            "Bars: share of single years, in 10 years, with a line of two Monte Carlo errors; dashed: a quarter of years. Low snow: below the {} % \
+             quantile of the reference's single years of {}; none where there are no such years.",
             grouped(100.0 * found.low_snow_below_quantile, 0),
             headline.measure.title
         ),

@@ -72,7 +72,7 @@ pub struct MeasureByYear {
     pub measure: Measure,
     /// Variance by averaging period, one entry a level but the reference; none where nothing varies.
     pub partitions: Vec<Partition>,
-    /// Years by the fifths of the reference, one entry a level.
+    /// Years by the fifths of the reference, one entry a level; none where these cannot be told apart.
     pub types: Vec<YearTypes>,
     /// Low years, high ones and variability, one entry a level.
     pub tails: Vec<Tails>,
@@ -136,7 +136,8 @@ impl MeasureByYear {
     ) -> Option<Self> {
         let ByYearQuestions { levels_c, reference, warming_rate, .. } = *asked;
         let all: Vec<Ranked> = years.iter().map(ranked).collect();
-        let types = year_types(&all, levels_c, reference, years[reference].nrows(), resamples)?;
+        let types =
+            year_types(&all, levels_c, reference, years[reference].nrows(), resamples).unwrap_or_default();
         let tails = tails(&all, levels_c, reference, years[reference].nrows(), resamples)?;
         let others = levels_c.iter().enumerate().filter(|(level, _)| *level != reference);
         let partition = |(level, level_c): (usize, &f64)| {

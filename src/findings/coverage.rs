@@ -13,7 +13,7 @@ use super::yardstick::Levels;
 use super::{Crossing, CrossingRange, Root};
 use crate::ensemble::NodeRuns;
 use crate::perturb::stream;
-use crate::season::{Kind, Measure, Place};
+use crate::season::Measure;
 use ndarray::{Array2, Array3, Axis};
 use rand_distr::{Distribution, StandardNormal};
 
@@ -35,14 +35,7 @@ fn realizations(study: u64, count: usize) -> Vec<f64> {
 }
 
 fn headline() -> Measure {
-    Measure {
-        name: "swe_04_01_mm".to_owned(),
-        title: "1 April SWE".to_owned(),
-        kind: Kind::AmountMm,
-        place: Place::BandsAndBasin,
-        is_volume: false,
-        has_extremes_told: false,
-    }
+    Measure::april_swe()
 }
 
 fn holds(range: Option<CrossingRange>, truth_c: f64) -> bool {

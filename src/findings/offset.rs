@@ -101,19 +101,12 @@ fn first_below(warmings_c: &[f64], excess: &[f64]) -> Crossing {
 mod tests {
     use super::*;
     use crate::ensemble::NodeRuns;
-    use crate::season::{Kind, Measure, Place};
+    use crate::season::Measure;
     use ndarray::Array3;
 
     /// Ten realizations of 400 to 490 mm that lose so much at a warming, and gain with precipitation.
     fn nodes(changes: &[Change], loss: impl Fn(f64) -> f64) -> Nodes {
-        let measure = Measure {
-            name: "swe_04_01_mm".to_owned(),
-            title: "1 April SWE".to_owned(),
-            kind: Kind::AmountMm,
-            place: Place::BandsAndBasin,
-            is_volume: false,
-            has_extremes_told: false,
-        };
+        let measure = Measure::april_swe();
         let value = |change: &Change, at: usize| {
             (400.0 + 10.0 * at as f64)
                 * (1.0 - loss(change.warming_c))

@@ -23,7 +23,7 @@ pub struct RecordCoincidence {
     pub fisher_p: Option<f64>,
     /// A year is low in snow below this headline SWE at the reference, mm: the quantile of the record's years that is stated.
     pub low_snow_below_mm: f64,
-    /// Its quantile among the record's years.
+    /// Its quantile among the record's years. Where none of these lies below the limit, low snow is counted of no year.
     pub low_snow_below_quantile: f64,
     /// Low-snow years among those dry and warm.
     pub low_snow_given_dry_warm: Counted,
@@ -95,8 +95,9 @@ impl RecordCoincidence {
             years.iter().for_each(|(_, values)| counts[place(values)] += 1);
             Cells::of(counts)
         };
-        // Below bare ground nothing lies, so that no year is asked.
-        let has_snow = low_snow_below_mm > 0.0;
+        // Below the lowest year, or bare ground, nothing lies, so that no year is asked.
+        let has_snow =
+            low_snow_below_mm > 0.0 && all(0).first().is_some_and(|lowest| *lowest < low_snow_below_mm);
         let low = |cell: usize, of: u64| {
             let of = if has_snow { of } else { 0 };
             let is_low = |values: &[f64; 3]| place(values) == cell && values[0] < low_snow_below_mm;

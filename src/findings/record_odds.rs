@@ -174,19 +174,12 @@ impl Moved {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::season::{Measure, Place};
+    use crate::season::Measure;
     use ndarray::{Array3, Array4};
 
     /// One realization of the headline alone, a row a level.
     fn seasons_of(levels: &[&[f64]]) -> BasinSeasons {
-        let headline = Measure {
-            name: "swe_04_01_mm".to_owned(),
-            title: "1 April SWE".to_owned(),
-            kind: Kind::AmountMm,
-            place: Place::BandsAndBasin,
-            is_volume: false,
-            has_extremes_told: false,
-        };
+        let headline = Measure::april_swe();
         BasinSeasons {
             measures: vec![headline],
             years: Array4::from_shape_fn((levels.len(), 1, 1, levels[0].len()), |(level, _, _, year)| {

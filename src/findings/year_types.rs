@@ -61,6 +61,10 @@ struct Level {
 
 fn sorted_into_types(years: &[Ranked], reference: usize, weights: &[u32]) -> Option<Vec<Level>> {
     let fixed = years[reference].quantiles(weights, TYPE_LIMITS)?;
+    // Of years that are alike, such as many without any outflow, a fifth cannot be told from the next.
+    if fixed.windows(2).any(|limits| limits[0] >= limits[1]) {
+        return None;
+    }
     let of_level = |years: &Ranked| {
         let limits = years.quantiles(weights, TYPE_LIMITS)?;
         let mut counts = [0.0; TYPES];
@@ -102,6 +106,9 @@ mod tests {
             assert!((kept - own / 2.0).abs() < 1e-12, "{kept} of {own}");
         }
         assert!((limits(0)[0] - 20.4).abs() < 1e-9);
+        // With 45 years of 0 the limits at 20 and at 40 % are both 0.
+        let alike = ranked((1..=100).map(|at| if at <= 45 { 0.0 } else { f64::from(at) }));
+        assert!(year_types(&[alike], &[0.0], 0, 10, &Resamples::new(1, 10)).is_none());
         assert_eq!(found[1].bounds.map(|bound| bound.is_some()), [false, false, false, false, true]);
     }
 }

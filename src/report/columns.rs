@@ -32,7 +32,7 @@ impl Cells {
         Some(Self { header, rows: reader.records().collect::<Result<_, _>>().ok()? })
     }
 
-    /// What the column at a place holds; words where it is empty throughout.
+    /// What the column at a place holds; one that is empty throughout by its name, so that the columns of two studies agree.
     pub fn holds(&self, at: usize) -> Holds {
         let told = || self.rows.iter().filter_map(|row| row.get(at)).filter(|cell| !NO_NUMBER.contains(cell));
         let all = |is: fn(&str) -> bool| told().next().is_some() && told().all(is);
@@ -42,10 +42,30 @@ impl Cells {
             Holds::YesOrNo
         } else if all(|cell| chrono::NaiveDate::parse_from_str(cell, "%Y-%m-%d").is_ok()) {
             Holds::Dates
+        } else if told().next().is_none() && self.header.get(at).is_some_and(is_named_for_numbers) {
+            Holds::Numbers
         } else {
             Holds::Words
         }
     }
+}
+
+fn is_named_for_numbers(column: &str) -> bool {
+    const PARTS: [&str; 12] = [
+        "chance",
+        "share",
+        "error",
+        "bound",
+        "ratio",
+        "q05",
+        "q95",
+        "years",
+        "realizations",
+        "correlation",
+        "signal",
+        "wilson",
+    ];
+    unit(column).is_some() || PARTS.iter().any(|part| column.contains(part))
 }
 
 /// A cell as a number, if it is one.
@@ -95,6 +115,16 @@ mod tests {
         let expected =
             [Holds::Numbers, Holds::YesOrNo, Holds::Dates, Holds::Words, Holds::Numbers, Holds::Words];
         assert_eq!(holds, expected);
+    }
+
+    /// The same columns, emptied, hold the same kinds.
+    #[test]
+    fn an_empty_column_of_numbers_stays_one() {
+        for rows in ["3.5,0.1,why\n", ",,\n", ""] {
+            let cells = Cells::of(format!("q05_mm,chance_bound,note\n{rows}").as_bytes()).unwrap();
+            let holds = [0, 1, 2].map(|at| cells.holds(at));
+            assert_eq!(holds, [Holds::Numbers, Holds::Numbers, Holds::Words], "{rows:?}");
+        }
     }
 
     #[test]

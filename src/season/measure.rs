@@ -38,6 +38,12 @@ pub struct Measure {
 }
 
 impl Measure {
+    /// The headline of most studies, for tests that need a measure.
+    #[cfg(test)]
+    pub fn april_swe() -> Self {
+        Self::new(Kind::AmountMm, "swe_04_01_mm", "1 April SWE")
+    }
+
     pub(super) fn new(kind: Kind, name: impl Into<String>, title: impl Into<String>) -> Self {
         Self {
             name: name.into(),

@@ -115,12 +115,22 @@ fn of_record(found: &RecordCoincidence) -> String {
             if p < 0.05 { "that is hardly chance" } else { "so few years cannot tell that from chance" };
         format!(" Fisher's exact test of independence has p = {}: {verdict}.", fixed(p, 2))
     });
+    let quantile = stated(100.0 * found.low_snow_below_quantile);
+    let (warm, cool) = (found.low_snow_given_dry_warm, found.low_snow_given_dry_cool);
+    let low_snow = if warm.of + cool.of == 0 {
+        format!(
+            "No year of it lies below their {quantile} % quantile of snow, so that nothing is said of low snow in dry ones."
+        )
+    } else {
+        format!(
+            "Low snow, below the {quantile} % quantile of these years, came in {} dry and warm years and in {} dry and cool ones.",
+            counted(warm),
+            counted(cool)
+        )
+    };
     let mut words = format!(
-        "In the record itself, {} years are dry and warm; in brackets Wilson's 95 % interval.{test} Low snow, below the {} % quantile of these years, came in {} dry and warm years and in {} dry and cool ones.",
-        counted(found.dry_warm),
-        stated(100.0 * found.low_snow_below_quantile),
-        counted(found.low_snow_given_dry_warm),
-        counted(found.low_snow_given_dry_cool)
+        "In the record itself, {} years are dry and warm; in brackets Wilson's 95 % interval.{test} {low_snow}",
+        counted(found.dry_warm)
     );
     let is_told = |periods: &PeriodsCompared| {
         [periods.earlier, periods.later].iter().all(|period| period.dry_warm.of >= LEAST_YEARS_OF_A_PERIOD)

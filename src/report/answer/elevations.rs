@@ -10,10 +10,14 @@ use crate::findings::{
 /// What a range in brackets is, said behind them.
 const IN_BRACKETS: &str = "in brackets 5–95 % over resampled realizations";
 
-/// Of the highest level: the bands' changes, the snow line and snow at risk; and the crossover wherever it becomes another.
+/// Of the level farthest from the reference: the bands' changes, the snow line and snow at risk; and the crossover wherever it becomes another.
 pub(super) fn elevations(findings: &Findings, reader: Reader) -> Vec<String> {
     let Some(places) = &findings.places else { return Vec::new() };
-    let changes = places.band_change.last().map(|change| band_change(change, findings, reader));
+    let reference_c = findings.levels_c[findings.reference];
+    let distance = |level_c: f64| (level_c - reference_c).abs();
+    let farthest =
+        places.band_change.iter().max_by(|a, b| distance(a.level_c).total_cmp(&distance(b.level_c)));
+    let changes = farthest.map(|change| band_change(change, findings, reader));
     let line = snow_line(&places.snow_line, findings, reader);
     let risk = places.at_risk.as_ref().and_then(|found| found.levels.last());
     let risk = risk.map(|at| at_risk(at, reader));
@@ -67,7 +71,9 @@ fn snow_line(found: &SnowLine, findings: &Findings, reader: Reader) -> Option<St
         Line::BelowLowestBand => "at or below the lowest band".to_owned(),
         Line::AboveHighestBand => "above the highest band".to_owned(),
     };
-    let (now, then) = (found.levels.get(findings.reference)?, found.levels.last()?);
+    let now = found.levels.get(findings.reference)?;
+    let distance = |level_c: f64| (level_c - now.level_c).abs();
+    let then = found.levels.iter().max_by(|a, b| distance(a.level_c).total_cmp(&distance(b.level_c)))?;
     let snow = |line: Line, range: Option<LineRange>| {
         let range = range.filter(|_| line.elevation_m().is_some());
         at(line) + &range.map_or(String::new(), |range| format!(" ({})", ends(range, reader)))
@@ -157,14 +163,22 @@ fn at_risk(found: &AtRiskLevel, reader: Reader) -> String {
         Some(_) => format!("; {IN_BRACKETS}"),
         None => String::new(),
     };
+    let [low, high] =
+        [found.volume_range_hm3.q05, found.volume_range_hm3.q95].map(|end| reader.volume_bare(end));
+    // Of realizations that are all alike, or a single one, there is no range to tell.
+    let spread = if low == high {
+        String::new()
+    } else {
+        format!(
+            " From realization to realization it is {low} to {} (5–95 %).",
+            reader.volume(found.volume_range_hm3.q95)
+        )
+    };
     format!(
-        "At risk by {level}: bands whose winter mean over the record's years is at or below freezing now and above it then. They hold {} % of the \
-         area, which rests on no realization, and {}{volumes} of snow water{share}{brackets}. From realization to realization it is {} to {} \
-         (5–95 %).",
+        "At risk by {level}: bands whose winter mean over the record's years is at or below freezing at the reference and above it there. They hold {} % of the \
+         area, which rests on no realization, and {}{volumes} of snow water{share}{brackets}.{spread}",
         percent(found.area_share),
-        reader.volume(found.volume_hm3),
-        reader.volume_bare(found.volume_range_hm3.q05),
-        reader.volume(found.volume_range_hm3.q95)
+        reader.volume(found.volume_hm3)
     )
 }
 

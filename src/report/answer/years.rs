@@ -172,8 +172,9 @@ fn worst_year(worst: &WorstYear, by_year: &ByYear, findings: &Findings, reader: 
              little more than that count."
         }
         (true, true) => {
-            " The realizations are the record's own winters in another order, wetter or drier by the assumed change of mean precipitation: at \
-             the reference this rests on those very winters and on that assumption, and says little more than that count."
+            " The realizations are the record's own winters in another order, wetter or drier by the assumed change of mean precipitation: only \
+             those that it makes drier, half of them, can have as little, so that at the reference it comes about half as often as in the \
+             record, by that assumption alone."
         }
         (false, _) => "",
     };
@@ -222,8 +223,8 @@ fn types(of: &MeasureByYear, findings: &Findings, reader: Reader) -> Option<Stri
     let (own, kept) = (reference.kept_limits.first()?, at.kept_limits.first()?);
     let [driest, wettest] = [at.shares.first()?, at.shares.last()?];
     Some(format!(
-        "By {}: at {} {} fall into what is the driest fifth at the reference, and {} into the wettest; to keep a fifth of the \
-         years in the driest type its limit would go from {} to {}.",
+        "By {}: at {} what is the driest fifth at the reference takes in {}, and the wettest {}; to keep a fifth of the years in the \
+         driest type its limit would go from {} to {}.",
         of.measure.title,
         reader.level(at.level_c),
         in_years(driest.value),

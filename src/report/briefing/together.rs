@@ -1,7 +1,7 @@
 //! Warming and precipitation together: the surface, what a degree and a percent do, named changes, and what is to hold.
 
 use super::super::answer::{Answer, is_scarce, per_degree, percent};
-use super::super::numbers::{DASH, days_moved, precision, signed};
+use super::super::numbers::{DASH, counted, days_moved, precision, signed};
 use super::super::study::Study;
 use super::Figures;
 use crate::figures::Part;
@@ -20,7 +20,7 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer, figures: &Figures<'_>)
         @if let Some(surface) = findings.surface.as_ref().filter(|_| has_snow) {
             h2 { "Warming and precipitation together" }
             p {
-                "Runs of " (surface.realizations) " realizations, the study's first, at " (surface.nodes.len()) " nodes: each changes all \
+                "Runs of " (counted(surface.realizations, "realization")) ", the study's first, at " (surface.nodes.len()) " nodes: each changes all \
                  precipitation by one percentage, on top of no other change, and warms every day as the study's levels do. Wet days stay as \
                  frequent as in the record."
             }

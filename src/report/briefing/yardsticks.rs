@@ -1,7 +1,7 @@
 //! The verdict by other yardsticks, and what would make up for the warming.
 
 use super::super::answer::{Answer, is_scarce, period_name};
-use super::super::numbers::{DASH, fixed, trimmed};
+use super::super::numbers::{DASH, counted, fixed, trimmed};
 use super::super::reader::Reader;
 use super::super::study::Study;
 use super::answer::ratio;
@@ -19,7 +19,7 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
             h2 { "What would make up for it" }
             ul { @for sentence in &answer.break_even { li { (sentence) } } }
             @if let Some(found) = &findings.break_even { p {
-                "Break-even precipitation, found by runs: the same " (found.realizations) " realizations without an assumed change of mean \
+                "Break-even precipitation, found by runs: the same " (counted(found.realizations, "realization")) " without an assumed change of mean \
                  precipitation, every wet day changed by the same percentage, until the median " (period_name(findings, headline)) " stands \
                  where the reference's does (" (study.reader.amount(found.reference_median)) ")."
             } }

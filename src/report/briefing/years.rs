@@ -220,7 +220,7 @@ const FIFTHS: [&str; TYPES] = ["Driest fifth", "Second", "Middle", "Fourth", "We
 
 fn types(findings: &Findings, measure: &MeasureByYear, reader: Reader) -> Markup {
     let depth = reader.units.depth().word;
-    html! { div.scroll { table {
+    html! { @if !measure.types.is_empty() { div.scroll { table {
         caption {
             (crate::figures::sentence(&measure.measure.title)) ", single years: share in each fifth of the reference with its 5–95 % range, and below it \
              the upper limit (" (depth) ") that would keep the type a fifth of the level's own years. A type that keeps its name by a \
@@ -237,7 +237,7 @@ fn types(findings: &Findings, measure: &MeasureByYear, reader: Reader) -> Markup
                 @if let Some(limit) = level.kept_limits.get(at) { br; "up to " (reader.amount_bare(limit.value)) }
             } }
         } } }
-    } } }
+    } } } }
 }
 
 fn tails(findings: &Findings, measure: &MeasureByYear, reader: Reader) -> Markup {

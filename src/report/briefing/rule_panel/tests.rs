@@ -4,7 +4,7 @@ use super::answers::answers;
 use super::*;
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::findings::{Fit, Rule, RuleRuns, Tuned};
-use crate::season::{Measure, Outcome, Place};
+use crate::season::{Measure, Outcome};
 use crate::units::UnitSystem;
 use ndarray::Array3;
 
@@ -30,14 +30,7 @@ fn runs(rule: Rule, loss_mm: f64, catch_factor: f64, day: Outcome, realizations:
 }
 
 fn panel(runs: &[RuleRuns], of_study: usize) -> RulePanel {
-    let measure = Measure {
-        name: "swe_04_01_mm".to_owned(),
-        title: "1 April SWE".to_owned(),
-        kind: Kind::AmountMm,
-        place: Place::BandsAndBasin,
-        is_volume: false,
-        has_extremes_told: false,
-    };
+    let measure = Measure::april_swe();
     RulePanel::of(&[measure], runs, (of_study, 40), (&[0.0, 1.0], 0), 7).unwrap()
 }
 
