@@ -10,9 +10,11 @@ pub(super) fn by_year(found: &ByYear, units: UnitSystem) -> Vec<(&'static str, V
     let mut tables = vec![
         ("variance-by-averaging-period", partitions(found, units)),
         ("tails", tails(found, units)),
-        ("year-types", year_types(found, units)),
         ("change-against-spread", detection(found, units)),
     ];
+    if found.measures.iter().any(|measure| !measure.types.is_empty()) {
+        tables.push(("year-types", year_types(found, units)));
+    }
     if found.low_snow.is_some() {
         tables.push(("low-snow-odds", low_snow(found, units)));
         tables.push(("low-snow-in-the-record", low_snow_in_the_record(found, units)));
