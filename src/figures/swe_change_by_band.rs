@@ -25,21 +25,50 @@ const STEPS: usize = 6;
 /// Room for the names of lines at the right, px.
 const NAMES_PX: f64 = 190.0;
 
+/// An elevation that is marked, m, and its name.
+type Line = (f64, String);
+
+/// The elevations that are marked.
+struct Marked {
+    snow_lines: Vec<Line>,
+    crossover: Option<Line>,
+}
+
+impl Marked {
+    /// From the lowest.
+    fn lines(self) -> Vec<Line> {
+        let mut lines: Vec<Line> = self.snow_lines.into_iter().chain(self.crossover).collect();
+        lines.sort_by(|a, b| a.0.total_cmp(&b.0));
+        lines
+    }
+}
+
 /// What is written and drawn.
 struct Told<'a> {
     findings: &'a Findings,
     shown: &'a Shown,
     /// Elevations that are marked, each with its name, from the lowest.
-    lines: Vec<(f64, String)>,
+    lines: Vec<Line>,
     title: String,
     ensemble: String,
     axis: String,
-    key: &'static str,
+    key: String,
 }
 
 const KEY: &str = "Markers: median of the paired changes of each band, at its elevation; bars: their 5–95 % over realizations. A bar that holds 0 \
-                   cannot tell loss from gain. Snow line: the lowest elevation with the stated snow water; crossover: below it warm years, above it wet \
-                   years decide the snow.";
+                   cannot tell loss from gain.";
+const SNOW_LINE: &str = " Snow line: the lowest elevation with the stated snow water.";
+const CROSSOVER: &str = " Crossover: below it warm years, above it wet years decide the snow.";
+
+/// How to read it, with the lines that are drawn alone.
+fn key(marked: &Marked) -> String {
+    let of = |is_drawn: bool, words: &'static str| if is_drawn { words } else { "" };
+    format!(
+        "{KEY}{}{}",
+        of(!marked.snow_lines.is_empty(), SNOW_LINE),
+        of(marked.crossover.is_some(), CROSSOVER)
+    )
+}
 
 fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let headline = findings.basin.first()?;
@@ -47,8 +76,15 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
     let shown = Shown::of(findings);
     let farthest = shown.farthest()?;
     let units = setting.units;
+    let marked = marked(findings, places, farthest, units);
+    let key = key(&marked);
+    let asked = if marked.crossover.is_some() {
+        " The crossover is asked of the reference's single years."
+    } else {
+        ""
+    };
     let told = Told {
-        lines: lines(findings, places, farthest, units),
+        lines: marked.lines(),
         title: title(findings, places, farthest, units)?,
         ensemble: format!("{}.{}", ensemble(findings), shown.in_words(findings, units)),
         axis: format!(
@@ -57,17 +93,18 @@ fn draw(findings: &Findings, setting: &Setting<'_>) -> Option<Svg> {
             findings.years,
             units.depth().word
         ),
-        key: KEY,
+        key,
         findings,
         shown: &shown,
     };
     let text = paint(&told, places, setting).ok()?;
     let caption = format!(
-        "{} Change of {} at each warming level from the reference, {}. {KEY} The crossover is asked of the reference's single years. Spread is chance \
-         between realizations, not day-to-day variation.",
+        "{} Change of {} at each warming level from the reference, {}. {}{asked} Spread is chance between realizations, not \
+         day-to-day variation.",
         FIGURE.question,
         headline.measure.title,
-        ensemble(findings)
+        ensemble(findings),
+        told.key
     );
     let alt = format!("{}. Changes of {} bands by elevation.", told.title, findings.bands.len());
     Some(Svg { text, title: told.title, caption, alt })
@@ -95,32 +132,34 @@ fn title(findings: &Findings, places: &Places, at: usize, units: UnitSystem) -> 
     })
 }
 
-fn lines(findings: &Findings, places: &Places, farthest: usize, units: UnitSystem) -> Vec<(f64, String)> {
+fn marked(findings: &Findings, places: &Places, farthest: usize, units: UnitSystem) -> Marked {
     let word = units.elevation().word;
-    let mut lines = Vec::new();
+    let mut snow_lines = Vec::new();
     for at in [findings.reference, farthest] {
         let level = places.snow_line.levels.get(at).and_then(|level| level.snow_line.elevation_m());
-        lines.extend(level.map(|m| {
+        snow_lines.extend(level.map(|m| {
             (m, format!("Snow line, {} {word}, {}", elevation(units, m), name(findings, at, units)))
         }));
     }
     // A crossover that other realizations would not have is told on the page, and not drawn as if it stood.
     let is_firm = |crossover: &&Crossover| crossover.range.is_none_or(|range| range.is_firm());
-    if let Some(Dominates::Crossover { elevation_m }) =
-        places.crossover.get(findings.reference).filter(is_firm).map(|crossover| crossover.found)
-    {
-        lines.push((elevation_m, format!("Crossover, {} {word}", elevation(units, elevation_m))));
-    }
-    lines.sort_by(|a, b| a.0.total_cmp(&b.0));
-    lines
+    let crossover = places.crossover.get(findings.reference).filter(is_firm).and_then(|crossover| {
+        match crossover.found {
+            Dominates::Crossover { elevation_m } => {
+                Some((elevation_m, format!("Crossover, {} {word}", elevation(units, elevation_m))))
+            }
+            _ => None,
+        }
+    });
+    Marked { snow_lines, crossover }
 }
 
 fn paint(told: &Told<'_>, places: &Places, setting: &Setting<'_>) -> Drawn<String> {
     let (findings, units) = (told.findings, setting.units);
     let (depth, height) = (units.depth(), units.elevation());
     let heading = Paragraphs::heading(setting.study_title, &told.title, &told.ensemble);
-    let key = Paragraphs::key(told.key);
-    let top = MARGIN_PX + heading.height() + 44.0;
+    let key = Paragraphs::key(&told.key);
+    let top = MARGIN_PX + heading.height() + 58.0;
     let bottom = top + HEIGHT_PX;
     let levels: Vec<(usize, Vec<Option<BandChange>>)> =
         told.shown.others.iter().filter_map(|at| Some((*at, change_at(places, findings, *at)?))).collect();
@@ -142,7 +181,7 @@ fn paint(told: &Told<'_>, places: &Places, setting: &Setting<'_>) -> Drawn<Strin
     let thin = Stroke::solid(EDGE, 1.0);
     sheet.write(
         &format!("Elevation ({})", height.word),
-        (MARGIN_PX, top - 24.0),
+        (MARGIN_PX, top - 32.0),
         NAME,
         HPos::Left,
         VPos::Bottom,

@@ -111,7 +111,7 @@ pub use rule_panel::{
     OutweighsOverRules, PEAK_TOLERANCE_PCT, PanelRule, RangeOverRules, Rule, RulePanel, RuleRuns, Tuned,
     Weight, is_at_bound, retuned, tune,
 };
-pub use shift::{Shift, percent_change};
+pub use shift::{LEAST_REALIZATIONS_FOR_A_RANGE, Shift, percent_change};
 pub use snow_drought::{SnowDroughtLevel, SnowDroughts};
 pub use snow_line::{SnowLine, SnowLineLevel};
 pub use spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};

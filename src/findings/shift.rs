@@ -5,8 +5,8 @@ use super::resample::{Estimate, Ranked, Resamples};
 use crate::season::Kind;
 use serde::Serialize;
 
-/// A 5-95 % range of fewer pairs is their extremes.
-const LEAST_PAIRS_FOR_A_RANGE: usize = 20;
+/// A 5-95 % range of fewer realizations is their extremes.
+pub const LEAST_REALIZATIONS_FOR_A_RANGE: usize = 20;
 
 /// The paired change from the reference to a level over realizations.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
@@ -28,7 +28,7 @@ pub struct Shift {
 impl Shift {
     /// Whether there are pairs enough for the 5-95 % range to be one.
     pub fn has_range(&self) -> bool {
-        self.pairs >= LEAST_PAIRS_FOR_A_RANGE
+        self.pairs >= LEAST_REALIZATIONS_FOR_A_RANGE
     }
 
     /// The shift between period values of the same realizations, and its median in every resample; nothing where no

@@ -29,6 +29,7 @@ use super::study::Study;
 use super::{cautions, terms};
 use crate::basin::Basin;
 use crate::figures::{Part, Svg};
+use crate::findings::LEAST_REALIZATIONS_FOR_A_RANGE;
 use maud::{Markup, html};
 
 /// The page; `of_sites` are the figures of observed snow. Nothing is fetched and no script runs: its own policy forbids
@@ -56,6 +57,7 @@ pub fn briefing_html(
                 "read how far it is from " a href=(format!("#{}", observed::ADDRESS)) { "what was observed" } " before you rely on any number here."
             }
         } }
+        @if let Some(words) = few_realizations(findings.realizations) { p.notice { (words) } }
         @if let Some(mismatch) = findings.generator.as_ref().and_then(|sheet| snow_mismatch(sheet, study.reader)) {
             p.notice { (mismatch) " All that follows is of weather that was made: "
                 a href=(format!("#{}", generator_sheet::ADDRESS)) { "see how near it comes to the record" } "." }
@@ -92,6 +94,26 @@ pub fn briefing_html(
         (repeat_section(study))
     };
     page(&format!("{} – briefing", study.title), &content)
+}
+
+/// What a page of few realizations opens with; nothing where there are enough.
+fn few_realizations(realizations: usize) -> Option<String> {
+    if realizations >= LEAST_REALIZATIONS_FOR_A_RANGE {
+        return None;
+    }
+    let (only, told) = match realizations {
+        1 => (
+            "a single realization".to_owned(),
+            "It shows no chance at all: shares and ranges below are empty or of years within it.",
+        ),
+        _ => (
+            format!("only {}", counted(realizations, "realization")),
+            "Shares, ranges and errors over so few say little about what others of the same kind would give.",
+        ),
+    };
+    Some(format!(
+        "This study ran {only}. {told} For anything but a first look, run some hundreds (count, under [realizations])."
+    ))
 }
 
 /// The figures of the page, by the part that they belong to.

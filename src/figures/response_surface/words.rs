@@ -5,6 +5,9 @@ use super::LIMITS_PCT;
 use crate::findings::{BREAK_EVEN_BRACKET_PCT, CurvePoint, Findings, ResponseSurface, Stays};
 use crate::units::UnitSystem;
 
+/// A change that a tenth of a percent cannot tell from none.
+const ROUNDED_AWAY_PCT: f64 = 0.05;
+
 /// Every text of the figure but ticks and rows.
 pub(super) struct Words {
     pub title: String,
@@ -30,6 +33,9 @@ impl Words {
             let at = format!("{}{alone}", level(units, point.warming_c));
             let [_, most] = BREAK_EVEN_BRACKET_PCT;
             match (point.precipitation_change_pct, point.stays) {
+                (Some(pct), _) if pct.abs() < ROUNDED_AWAY_PCT => {
+                    format!("At {at} the {measure} holds with as much precipitation as before")
+                }
                 (Some(pct), _) if pct > 0.0 => {
                     format!("At {at} it takes {} precipitation to hold the {measure}", signed_percent(pct))
                 }
@@ -64,8 +70,9 @@ impl Words {
             key: format!(
                 "Ground and thin lines: change of the median {measure} from the reference ({}), which is the ring; red is less \
                  snow. Small dots: realizations by their own cool-season weather at the reference, a different quantity from \
-                 the axes' change of every day.",
-                size_and_unit(units, surface.reference_median_mm)
+                 the axes' change of every day{}.",
+                size_and_unit(units, surface.reference_median_mm),
+                beyond_the_axes(surface, reference_c)
             ),
             caption: format!(
                 "How much {measure} would be left under any warming together with any change of precipitation? Change of the \
@@ -83,5 +90,23 @@ impl Words {
             title,
             ensemble,
         })
+    }
+}
+
+/// How many realizations lie outside what is drawn; nothing where none does.
+fn beyond_the_axes(surface: &ResponseSurface, reference_c: f64) -> String {
+    let within = |ends: &[f64], value: f64| {
+        ends.first().zip(ends.last()).is_some_and(|(low, high)| (*low..=*high).contains(&value))
+    };
+    let is_beyond = |warmer_c: f64, wetter_pct: f64| {
+        !within(&surface.warmings_c, reference_c + warmer_c)
+            || !within(&surface.precipitation_changes_pct, wetter_pct)
+    };
+    match surface.realized.iter().filter(|of| is_beyond(of.warmer_c, of.wetter_pct)).count() {
+        0 => String::new(),
+        beyond => format!(
+            "; {} outside the axes",
+            if beyond == 1 { "1 lies".to_owned() } else { format!("{beyond} lie") }
+        ),
     }
 }

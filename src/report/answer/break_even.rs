@@ -93,13 +93,14 @@ fn of_level(
     }
     let reached = &found.reached;
     let season = if reached.is_of_whole_years { "" } else { " in the cool season" };
-    let so_wet = match at.realizations_that_reached {
-        0 => "none".to_owned(),
-        count => fixed(count as f64, 0),
+    let so_wet = match (at.realizations_that_reached, reached.realizations) {
+        (0, 1) => "the one realization did not come".to_owned(),
+        (_, 1) => "the one realization came".to_owned(),
+        (0, all) => format!("none of {all} realizations came"),
+        (count, all) => format!("{count} of {all} realizations came"),
     };
     Some(format!(
         "At {level}, {size} % more precipitation on every wet day{on_top} would bring the {name} back to the reference's median; {so_wet} \
-         of {} came to so much{season} by chance and assumption.",
-        counted(reached.realizations, "realization")
+         to so much{season} by chance and assumption."
     ))
 }

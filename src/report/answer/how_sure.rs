@@ -1,6 +1,6 @@
 //! How sure the answer is: Monte Carlo error and the record's own uncertainty, kept apart, and what chance could hide.
 
-use super::super::numbers::signed;
+use super::super::numbers::{counted, signed};
 use super::super::reader::Reader;
 use super::{chance, telling_level};
 use crate::findings::{CrossingRange, Findings, MeasureFindings, Range};
@@ -38,9 +38,10 @@ pub(super) fn how_sure(findings: &Findings, headline: &MeasureFindings, reader: 
     }
     if let Some(record) = headline.record_range.as_ref().filter(|record| !record.is_telling()) {
         words.push(format!(
-            "What another record of the same kind would say is not told: of {} years and {} realizations of each resampled record it would \
+            "What another record of the same kind would say is not told: of {} years and {} of each resampled record it would \
              mostly be noise.",
-            record.record_years, record.realizations
+            record.record_years,
+            counted(record.realizations, "realization")
         ));
     }
     words.extend(chance::could_be_hidden(findings, &headline.levels[at], reader));

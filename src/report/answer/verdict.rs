@@ -140,11 +140,13 @@ pub(super) fn how_much(
     } else {
         String::new()
     };
-    let realizations = if shift.pairs == 1 { "realization" } else { "realizations" };
+    let over = match shift.pairs {
+        1 => "the one realization against itself".to_owned(),
+        pairs => format!("the median over {pairs} realizations, each against itself"),
+    };
     format!(
-        "At {}, the {} {change}{percent}: the median over {} {realizations}, each against itself{range}{ratio}.",
+        "At {}, the {} {change}{percent}: {over}{range}{ratio}.",
         reader.level(at.level_c),
         period_name(findings, headline),
-        shift.pairs,
     )
 }
