@@ -57,11 +57,11 @@ pub fn briefing_html(
                 "read how far it is from " a href=(format!("#{}", observed::ADDRESS)) { "what was observed" } " before you rely on any number here."
             }
         } }
-        @if let Some(words) = few_realizations(findings.realizations) { p.notice { (words) } }
         @if let Some(mismatch) = findings.generator.as_ref().and_then(|sheet| snow_mismatch(sheet, study.reader)) {
             p.notice { (mismatch) " All that follows is of weather that was made: "
                 a href=(format!("#{}", generator_sheet::ADDRESS)) { "see how near it comes to the record" } "." }
         }
+        @if let Some(words) = few_realizations(findings.realizations) { p.notice { (words) } }
         @if !study.unlikely.is_empty() {
             p.notice { (counted(study.unlikely.len(), "thing")) " about the input " (if study.unlikely.len() == 1 { "is" } else { "are" })
                 " " a href=(format!("#{}", assumed::SECOND_LOOK)) { "worth a second look" } "." }
