@@ -49,6 +49,11 @@ impl MonthDay {
         Self::new(month.parse().ok()?, day.parse().ok()?)
     }
 
+    /// The day of the month, from 1.
+    pub fn day(self) -> u32 {
+        self.day
+    }
+
     /// The month, 1 to 12.
     pub fn month(self) -> u32 {
         self.month

@@ -3,6 +3,7 @@
 
 #![allow(clippy::unwrap_used, reason = "a test that cannot go on should say where")]
 
+mod browser;
 mod cli;
 mod golden;
 mod invariants;

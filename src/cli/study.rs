@@ -155,12 +155,11 @@ fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Fa
     for figure in &FIGURES {
         if let Some(svg) = (figure.draw)(study.findings, &setting) {
             files.push((format!("figures/{}.svg", figure.slug), svg.text.clone().into_bytes()));
-            drawn.push((figure.part, svg));
+            drawn.push((*figure, svg));
         }
     }
-    let (slugs, drawn_of_sites): (Vec<_>, Vec<_>) =
-        of_sites(&study.findings.comparisons, &setting).into_iter().unzip();
-    for (slug, svg) in slugs.iter().zip(&drawn_of_sites) {
+    let drawn_of_sites = of_sites(&study.findings.comparisons, &setting);
+    for (slug, svg) in &drawn_of_sites {
         files.push((format!("figures/{slug}.svg"), svg.text.clone().into_bytes()));
     }
     let tables = tables(study);

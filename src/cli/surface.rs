@@ -103,7 +103,8 @@ fn run(
     generator: &dyn Generator,
     watch: &dyn Watch,
 ) -> Result<Nodes, Halt> {
-    let measures = Measures::of_snow_and_timing(plan.measures.settings().clone(), ready.basin.area_km2());
+    let measures =
+        Measures::of_snow_water_and_timing(plan.measures.settings().clone(), ready.basin.area_km2());
     let classes = ready.scenario.snow.options.patchiness.map_or(1, |patchiness| patchiness.classes);
     let nodes_of_a_run = (MOST_LANES / (plan.bands * classes)).max(8);
     let with_reference = |nodes: &[Change]| {

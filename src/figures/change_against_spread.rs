@@ -15,6 +15,7 @@ use crate::units::UnitSystem;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "change-against-spread",
+    table: "change-against-spread",
     question: "From which warming on does the change stand out from what chance does?",
     part: Part::Years,
     draw,

@@ -12,6 +12,7 @@ use crate::units::UnitSystem;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "dry-and-warm",
+    table: "dry-and-warm",
     question: "How often are dry years warm as well, and what does that do to the snow?",
     part: Part::DryAndWarm,
     draw,

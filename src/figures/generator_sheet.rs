@@ -14,6 +14,7 @@ use words::{Words, outside_in_words};
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "generator-sheet",
+    table: "generator-sheet",
     question: "Does the weather that was made look like the record?",
     part: Part::Weather,
     draw,

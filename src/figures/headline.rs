@@ -10,7 +10,7 @@ use crate::units::UnitSystem;
 
 /// The level that a headline speaks of: the first at which the shift outweighs the spread, else the warmest; where none
 /// is warmer than the reference, the coldest.
-fn spoken_of(findings: &Findings, measure: &MeasureFindings) -> Option<usize> {
+pub(super) fn spoken_of(findings: &Findings, measure: &MeasureFindings) -> Option<usize> {
     let warmer = findings.reference + 1..measure.levels.len();
     let past_crossing = |level: &usize| match measure.outweighs {
         Crossing::At { level_c, .. } => findings.levels_c.get(*level).is_some_and(|at| *at >= level_c),

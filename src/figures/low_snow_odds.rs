@@ -14,6 +14,7 @@ use crate::findings::{Findings, LowSnow, LowSnowLevel};
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "low-snow-odds",
+    table: "low-snow-odds",
     question: "How often will a year have as little snow as few have now?",
     part: Part::Years,
     draw,

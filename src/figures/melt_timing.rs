@@ -17,8 +17,9 @@ use words::Words;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "melt-timing",
+    table: "basin-dates",
     question: "How much earlier does the snow melt as the basin warms?",
-    part: Part::Timing,
+    part: Part::Answer,
     draw,
 };
 

@@ -18,6 +18,7 @@ mod low_snow_odds;
 mod marks;
 mod melt_timing;
 mod observed_swe;
+mod one_slide;
 mod page;
 mod parameter_profiles;
 mod reading;
@@ -49,6 +50,7 @@ mod colour_sight;
 
 pub use fits::{DrawnFit, FIT_FIGURES, FIT_SITE_FIGURES, FitFigure, FitPart, FitSiteFigure, of_fit};
 pub use labels::{cause, sentence};
+pub use one_slide::PLANNING_AID;
 pub use rule_panel::rule_in_words;
 pub use text_width::text_width;
 
@@ -62,6 +64,8 @@ use crate::units::UnitSystem;
 pub struct Figure {
     /// Its name in files and addresses.
     pub slug: &'static str,
+    /// The table that holds its numbers.
+    pub table: &'static str,
     /// The question that it answers.
     pub question: &'static str,
     /// Which part of the page it belongs to.
@@ -93,10 +97,12 @@ pub enum Part {
     Record,
     /// Does the weather that was made look like it?
     Weather,
+    /// What is it on one slide? A file beside the page, which says where it stands.
+    Slide,
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 15] = [
+pub const FIGURES: [Figure; 16] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
@@ -112,6 +118,7 @@ pub const FIGURES: [Figure; 15] = [
     record_years::FIGURE,
     record_precipitation::FIGURE,
     generator_sheet::FIGURE,
+    one_slide::FIGURE,
 ];
 
 /// A figure of which there is one a site with observed snow.
@@ -119,6 +126,8 @@ pub const FIGURES: [Figure; 15] = [
 pub struct SiteFigure {
     /// Its name in files and addresses; the site's number follows.
     pub slug: &'static str,
+    /// The table that holds its numbers.
+    pub table: &'static str,
     /// The question that it answers.
     pub question: &'static str,
     /// Draws it under a name; nothing where the comparison has not what it shows.

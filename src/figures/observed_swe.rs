@@ -20,6 +20,7 @@ use words::Words;
 /// The figure.
 pub(super) const FIGURE: SiteFigure = SiteFigure {
     slug: "observed-swe",
+    table: "observed-daily",
     question: "How near does the model come to the snow that was observed?",
     draw,
 };

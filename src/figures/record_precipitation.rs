@@ -19,6 +19,7 @@ use words::Words;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "record-precipitation",
+    table: "record-years",
     question: "How far apart were the driest and the wettest winter of the record?",
     part: Part::Record,
     draw,

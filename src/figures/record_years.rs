@@ -18,6 +18,7 @@ use words::Words;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "record-years",
+    table: "record-years",
     question: "Which years does the study stand on, and which were left out?",
     part: Part::Record,
     draw,

@@ -20,6 +20,7 @@ use words::Words;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "response-surface",
+    table: "response-surface",
     question: "How much snow water would be left under any warming together with any change of precipitation?",
     part: Part::Together,
     draw,

@@ -19,6 +19,7 @@ use words::{Subject, Words};
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "rule-panel",
+    table: "rule-panel",
     question: "Would other rules of the snow give another answer?",
     part: Part::Rules,
     draw,

@@ -42,8 +42,9 @@ impl Stroke {
     }
 }
 
-/// A sheet of the figures' width.
+/// A sheet, of the figures' width unless it says otherwise.
 pub(super) struct Sheet {
+    width_px: f64,
     backend: Rc<RefCell<SvgBackend>>,
     area: DrawingArea<SvgBackend, Shift>,
     height_px: f64,
@@ -57,10 +58,15 @@ pub(super) struct Plot {
 impl Sheet {
     /// A white sheet.
     pub fn new(height_px: f64) -> Drawn<Self> {
+        Self::of_size(WIDTH_PX, height_px)
+    }
+
+    /// A white sheet of another width.
+    pub fn of_size(width_px: f64, height_px: f64) -> Drawn<Self> {
         let height_px = height_px.ceil();
-        let backend = Rc::new(RefCell::new(SvgBackend::new(WIDTH_PX, height_px)));
-        let sheet = Self { area: (&backend).into(), backend, height_px };
-        sheet.classed("paper", || sheet.block((0.0, 0.0), (WIDTH_PX, height_px), PAPER))?;
+        let backend = Rc::new(RefCell::new(SvgBackend::new(width_px, height_px)));
+        let sheet = Self { width_px, area: (&backend).into(), backend, height_px };
+        sheet.classed("paper", || sheet.block((0.0, 0.0), (width_px, height_px), PAPER))?;
         Ok(sheet)
     }
 
@@ -69,7 +75,7 @@ impl Sheet {
         let chart = ChartBuilder::on(&self.area)
             .margin_left(fine(left_top.0))
             .margin_top(fine(left_top.1))
-            .margin_right(fine(WIDTH_PX - right_bottom.0))
+            .margin_right(fine(self.width_px - right_bottom.0))
             .margin_bottom(fine(self.height_px - right_bottom.1))
             .build_cartesian_2d(x, y)?;
         Ok(Plot { area: chart.plotting_area().clone() })
@@ -123,7 +129,7 @@ impl Sheet {
 
     /// The whole document. `title` and `description` are what a screen reader says.
     pub fn document(&self, slug: &str, title: &str, description: &str) -> String {
-        let (width, height) = (fine(WIDTH_PX) / 10, fine(self.height_px) / 10);
+        let (width, height) = (fine(self.width_px) / 10, fine(self.height_px) / 10);
         let mut svg = format!(
             "<svg xmlns=\"http://www.w3.org/2000/svg\" class=\"figure {slug}\" width=\"{width}\" height=\"{height}\" \
              viewBox=\"0 0 {width} {height}\" role=\"img\" aria-labelledby=\"{slug}-title {slug}-desc\" \

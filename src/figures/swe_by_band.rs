@@ -28,8 +28,9 @@ use words::Words;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "swe-by-band",
+    table: "bands-amounts",
     question: "At which elevations is the snow water lost, and how much of the basin lies there?",
-    part: Part::Elevation,
+    part: Part::Answer,
     draw,
 };
 

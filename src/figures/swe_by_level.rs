@@ -19,6 +19,7 @@ use words::Words;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "swe-by-level",
+    table: "basin-amounts",
     question: "How much snow water is left as the basin warms, and does precipitation's chance hide the loss?",
     part: Part::Answer,
     draw,

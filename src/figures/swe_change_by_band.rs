@@ -15,6 +15,7 @@ use crate::units::UnitSystem;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "swe-change-by-band",
+    table: "swe-change-by-band",
     question: "Which elevations lose snow water, does any gain, and where do the snow line and the crossover lie?",
     part: Part::Elevation,
     draw,

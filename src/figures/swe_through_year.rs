@@ -21,6 +21,7 @@ use words::Words;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "swe-through-year",
+    table: "swe-through-year",
     question: "How does the snow build up and go through the year as the basin warms?",
     part: Part::Timing,
     draw,

@@ -78,6 +78,17 @@ pub const LABEL: Lettering = Lettering { class: "label", size_px: 13.0, is_bold:
 /// Explanations.
 pub const NOTE: Lettering = Lettering { class: "note", size_px: 12.5, is_bold: false, ink: QUIET };
 
+/// Width and height of a slide, px: 16 to 9.
+pub const SLIDE_PX: [f64; 2] = [1280.0, 720.0];
+/// The finding on a slide, read from the last row.
+pub const SLIDE_TITLE: Lettering = Lettering { class: "finding", size_px: 34.0, is_bold: true, ink: INK };
+/// What is named on a slide.
+pub const SLIDE_NAME: Lettering = Lettering { class: "name", size_px: 20.0, is_bold: true, ink: INK };
+/// Values and ticks of a slide.
+pub const SLIDE_LABEL: Lettering = Lettering { class: "label", size_px: 20.0, is_bold: false, ink: INK };
+/// Explanations on a slide.
+pub const SLIDE_NOTE: Lettering = Lettering { class: "note", size_px: 18.0, is_bold: false, ink: QUIET };
+
 impl Lettering {
     /// Width of a line in it, px.
     pub fn width(&self, text: &str) -> f64 {

@@ -12,6 +12,7 @@ use crate::units::UnitSystem;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "variance-by-averaging-period",
+    table: "variance-by-averaging-period",
     question: "Over how many years must one average before the warming holds the largest share of what differs?",
     part: Part::Years,
     draw,

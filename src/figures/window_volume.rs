@@ -19,6 +19,7 @@ use words::Words;
 /// The figure.
 pub(super) const FIGURE: Figure = Figure {
     slug: "window-volume",
+    table: "volumes",
     question: "How much water does the snow yield in the window, in dry years and in wet ones, as the basin warms?",
     part: Part::Volumes,
     draw,

@@ -13,7 +13,7 @@ use crate::season::{Kind, MELT_OUT_DAY, Measure, Outcome};
 use ndarray::Axis;
 use serde::Serialize;
 
-/// Measures that stand on the surface beside the headline's: half of the net melt done, melt-out, days under snow.
+/// Measures that stand on the surface beside the headline's and the first volume: half of the net melt done, melt-out, days under snow.
 const BESIDE: [&str; 3] = ["melt_d50_day", MELT_OUT_DAY, "snow_covered_days"];
 
 /// A change of climate: every day warmer by so much, and all its precipitation changed by so much.
@@ -109,6 +109,8 @@ pub struct SurfaceNode {
     pub change: Change,
     /// One entry a measure of the surface.
     pub measures: Vec<NodeMeasure>,
+    /// Median period value of SWE on the survey date in each band, from the lowest, mm.
+    pub band_swe_mm: Vec<f64>,
 }
 
 /// A named change, run.
@@ -349,14 +351,19 @@ impl Nodes {
 
     /// Places of the measures that stand on the surface.
     fn shown(&self) -> Vec<usize> {
-        let beside = |name: &&str| self.runs.measures.iter().position(|measure| measure.name == **name);
-        std::iter::once(0).chain(BESIDE.iter().filter_map(beside)).collect()
+        let measures = &self.runs.measures;
+        let beside = |name: &&str| measures.iter().position(|measure| measure.name == **name);
+        let volume = measures.iter().position(|measure| measure.is_volume);
+        std::iter::once(0).chain(volume).chain(BESIDE.iter().filter_map(beside)).collect()
     }
 
     fn node(&self, change: Change, shown: &[usize]) -> Option<SurfaceNode> {
         let node = self.at(change)?;
         let measures = shown.iter().map(|at| self.measure(node, *at)).collect();
-        Some(SurfaceNode { change, measures })
+        let of_bands = self.runs.band_swe_mm.index_axis(Axis(0), node);
+        let band_swe_mm =
+            of_bands.outer_iter().map(|of_band| quantile(&sorted(of_band.iter().copied()), 0.5));
+        Some(SurfaceNode { change, measures, band_swe_mm: band_swe_mm.collect() })
     }
 
     fn measure(&self, node: usize, at: usize) -> NodeMeasure {

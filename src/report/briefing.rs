@@ -3,11 +3,13 @@
 mod answer;
 mod assumed;
 mod elevation;
+mod explorer;
 mod generator_sheet;
 mod levels;
 mod normal;
 mod observed;
 mod parameters;
+mod parts;
 mod perennial;
 mod places;
 mod record;
@@ -28,20 +30,30 @@ use super::page::{figure, page};
 use super::study::Study;
 use super::{cautions, terms};
 use crate::basin::Basin;
-use crate::figures::{Part, Svg};
+use crate::figures::{Figure, Part, Svg};
 use crate::findings::LEAST_REALIZATIONS_FOR_A_RANGE;
 use maud::{Markup, html};
+use parts::{Group, part};
 
-/// The page; `of_sites` are the figures of observed snow. Nothing is fetched and no script runs: its own policy forbids
-/// both.
+/// So many cautions, those that matter most, stand right under the answer.
+const CAUTIONS_FIRST: usize = 3;
+
+/// Folds the parts.
+const PARTS: &str = include_str!("briefing/parts.js");
+/// Moves the explorer.
+const EXPLORER: &str = include_str!("briefing/explorer.js");
+
+/// The page; `of_sites` are the figures of observed snow. Nothing is fetched and no script but its own two runs: its own policy
+/// forbids both. Without them all of it stands open.
 pub fn briefing_html(
     study: &Study<'_>,
     answer: &Answer,
-    figures: &[(Part, Svg)],
-    of_sites: &[Svg],
+    figures: &[(Figure, Svg)],
+    of_sites: &[(String, Svg)],
 ) -> Vec<u8> {
     let figures = Figures(figures);
     let findings = study.findings;
+    let cautions = cautions::cautions(study.reader, study.warming, &study.snow.options);
     let content = html! {
         p.over {
             (counted(findings.realizations, "realization")) " of " (counted(findings.years, "water year")) " under "
@@ -67,33 +79,98 @@ pub fn briefing_html(
                 " " a href=(format!("#{}", assumed::SECOND_LOOK)) { "worth a second look" } "." }
         }
         (answer::section(study, answer))
+        div.first role="note" aria-label="Before a number is used" { ul { @for caution in cautions.iter().take(CAUTIONS_FIRST) { li { (caution) } } } }
         (figures.of(Part::Answer))
-        (snow::section(study, answer))
-        (snow::timing(study, &figures))
-        (elevation::section(study, &figures))
-        (places::elevations(answer))
-        (perennial::paragraph(study))
-        (places::years(answer, &figures))
-        (volumes::section(study, &figures))
-        (yardsticks::section(study, answer))
-        (together::section(study, answer, &figures))
-        (years::section(study, answer, &figures))
-        (parameters::section(study, answer))
-        (rule_panel::section(study, &figures))
-        (warm_years::section(study))
-        (record::section(study, &figures))
-        (replayed_years::section(study))
-        (generator_sheet::section(study, &figures))
-        (normal::section(study))
-        (observed::section(study, of_sites))
-        (assumed::section(study))
-        (list_section("Cautions", &cautions::cautions(study.reader, study.warming, &study.snow.options)))
-        h2 { "Terms" }
-        dl { @for (term, meaning) in terms::terms(study.reader) { dt { (term) } dd { (meaning) } } }
-        (sources::section())
-        (repeat_section(study))
+        @for (slide, _) in figures.0.iter().filter(|(of, _)| of.part == Part::Slide) {
+            @let file = format!("figures/{}.svg", slide.slug);
+            p { "The answer for a slide, 16 to 9: " a href=(file) { (file) } "." }
+        }
+        (explorer::section(study))
+        (parts::detail(&groups(study, answer, (&figures, of_sites), &cautions)))
     };
-    page(&format!("{} – briefing", study.title), &content)
+    let scripts: &[&str] = if findings.surface.is_some() { &[EXPLORER, PARTS] } else { &[PARTS] };
+    page(&format!("{} – briefing", study.title), &content, scripts)
+}
+
+/// Everything behind the answer, in the order of a reader's questions.
+fn groups(
+    study: &Study<'_>,
+    answer: &Answer,
+    (figures, of_sites): (&Figures<'_>, &[(String, Svg)]),
+    cautions: &[String],
+) -> [Group; 6] {
+    [
+        Group::new(
+            "The snow",
+            [
+                part("snow", "Snow, level by level", snow::section(study, answer)),
+                part("dates", "When it lies, and when it goes", snow::timing(study, figures)),
+                part("elevation", "Where it is lost", elevations(study, answer, figures)),
+                part("volumes", "Water from the snow, and when", volumes::section(study, figures)),
+            ],
+        ),
+        Group::new(
+            "Warming against precipitation",
+            [
+                part("yardsticks", "By other yardsticks", yardsticks::section(study, answer)),
+                part("make-up", "What would make up for it", yardsticks::make_up(study, answer)),
+                part(
+                    "together",
+                    "Warming and precipitation together",
+                    together::section(study, answer, figures),
+                ),
+                part("what-is-to-hold", "What is to hold", together::what_is_to_hold(answer)),
+            ],
+        ),
+        Group::new(
+            "Odds and single years",
+            [
+                part("years", "Years", years::section(study, answer, figures)),
+                part("dry-and-warm", "Dry years and warm ones", places::years(answer, figures)),
+                part("replayed-years", "Remembered years, replayed", replayed_years::section(study)),
+                part("percent-of-median", "Percent of median", normal::section(study)),
+            ],
+        ),
+        Group::new(
+            "The model and its fit",
+            [
+                part(observed::ADDRESS, "Observed snow", observed::section(study, of_sites)),
+                part(warm_years::ADDRESS, "How the fit did", warm_years::section(study)),
+                part("parameters", "If other parameters were right", parameters::section(study, answer)),
+                part("rules", "If the model's rules were others", rule_panel::section(study, figures)),
+            ],
+        ),
+        Group::new(
+            "The basin, its record and its realizations",
+            [
+                part("record", "The record", record::section(study, figures)),
+                part(
+                    generator_sheet::ADDRESS,
+                    "Does the weather that was made look like the record?",
+                    generator_sheet::section(study, figures),
+                ),
+                part("assumed", "What was assumed", assumed::section(study)),
+            ],
+        ),
+        Group::new(
+            "To look up",
+            [
+                part("cautions", "Cautions", html! { ul { @for caution in cautions { li { (caution) } } } }),
+                part(
+                    "terms",
+                    "Terms",
+                    html! { dl { @for (term, meaning) in terms::terms(study.reader) { dt { (term) } dd { (meaning) } } } },
+                ),
+                part("sources", "Sources of the methods", sources::section()),
+                part("repeat", "How to repeat it", repeat(study)),
+            ],
+        ),
+    ]
+}
+
+/// Where the snow goes, band by band, and lines that move with it.
+fn elevations(study: &Study<'_>, answer: &Answer, figures: &Figures<'_>) -> Markup {
+    html! { (elevation::section(study, figures)) (places::elevations(answer)) (perennial::paragraph(study)) }
 }
 
 /// What a page of few realizations opens with; nothing where there are enough.
@@ -117,25 +194,19 @@ fn few_realizations(realizations: usize) -> Option<String> {
 }
 
 /// The figures of the page, by the part that they belong to.
-struct Figures<'a>(&'a [(Part, Svg)]);
+struct Figures<'a>(&'a [(Figure, Svg)]);
 
 impl Figures<'_> {
     /// The figures of a part, in their order.
     fn of(&self, part: Part) -> Markup {
-        html! { @for (_, svg) in self.0.iter().filter(|(of, _)| *of == part) { (figure(svg)) } }
+        html! { @for (of, svg) in self.0.iter().filter(|(of, _)| of.part == part) { (figure(svg, of.slug, Some(of.table))) } }
     }
 }
 
-fn list_section(title: &str, sentences: &[String]) -> Markup {
-    html! { h2 { (title) } ul { @for sentence in sentences { li { (sentence) } } } }
-}
-
-fn repeat_section(study: &Study<'_>) -> Markup {
+fn repeat(study: &Study<'_>) -> Markup {
     html! {
-        h2 { "How to repeat it" }
         p { code { (study.origin.command) } " with seed " (study.origin.seed) " and thawline " (env!("CARGO_PKG_VERSION")) ". Input files and their SHA-256:" }
         ul { @for input in &study.origin.inputs { li { (input.role) ": " code { (input.path) } " " code { (input.sha256) } } } }
-        footer { "Written by thawline " (env!("CARGO_PKG_VERSION")) ". A planning aid: not for flood forecasting or the operation of dams." }
     }
 }
 

@@ -5,9 +5,7 @@ use super::reader::Reader;
 use crate::perturb::Warming;
 use crate::snow::SnowOptions;
 
-/// What it is for and what not: the first caution of every page.
-pub(super) const PLANNING_AID: &str = "A planning aid. Not for flood forecasting, flood design, the operation or the safety of \
-                                       dams: local codes, water-control manuals and licensed practice rule.";
+pub(super) use crate::figures::PLANNING_AID;
 
 /// Cautions in a reader's units, in order of weight.
 pub(super) fn cautions(reader: Reader, warming: &Warming, options: &SnowOptions) -> [String; 9] {

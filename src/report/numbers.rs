@@ -2,12 +2,30 @@
 
 use crate::calendar::{MONTHS, WaterYearStart, date_of};
 use chrono::Datelike;
+use serde::Serialize;
 
 /// The word for a number that is not there.
 pub const DASH: &str = "–";
 
 /// 10 to the power of each number of decimals.
 const POWERS_OF_TEN: [f64; 7] = [1.0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6];
+
+/// How many decimals a number has by its size.
+#[derive(Debug, Clone, Copy, Serialize)]
+pub struct Decimals {
+    /// Those of sizes below a limit, the lowest limit first.
+    pub below: &'static [(f64, usize)],
+    /// Those of all others.
+    pub otherwise: usize,
+}
+
+impl Decimals {
+    /// Of a number.
+    pub fn of(self, value: f64) -> usize {
+        let size = value.abs();
+        self.below.iter().find(|(limit, _)| size < *limit).map_or(self.otherwise, |(_, decimals)| *decimals)
+    }
+}
 
 /// A number with so many decimals (at most six), halves rounded away from zero, a true minus, no minus before zero, and thousands set apart by a thin space.
 pub fn fixed(value: f64, decimals: usize) -> String {

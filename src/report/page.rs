@@ -1,5 +1,6 @@
-//! A self-contained page: its style, its figures, and a policy by which nothing is fetched and no script runs.
+//! A self-contained page: its style, its figures, and a policy by which nothing is fetched and no script but its own runs.
 
+use super::cautions::PLANNING_AID;
 use crate::figures::Svg;
 use maud::{DOCTYPE, Markup, PreEscaped, html};
 use sha2::{Digest, Sha256};
@@ -7,9 +8,12 @@ use sha2::{Digest, Sha256};
 const STYLE: &str = include_str!("briefing/style.css");
 
 /// The page with this title and content.
-pub(super) fn page(title: &str, content: &Markup) -> Vec<u8> {
-    let policy =
-        format!("default-src 'none'; style-src 'sha256-{}'", base64(&Sha256::digest(STYLE.as_bytes())));
+/// `scripts` stand at its end, in this order.
+pub(super) fn page(title: &str, content: &Markup, scripts: &[&str]) -> Vec<u8> {
+    let digest = |text: &str| format!(" 'sha256-{}'", base64(&Sha256::digest(text.as_bytes())));
+    let of_scripts = scripts.iter().map(|script| digest(script)).collect::<String>();
+    let allowed = if scripts.is_empty() { String::new() } else { format!("; script-src{of_scripts}") };
+    let policy = format!("default-src 'none'; style-src{}{allowed}", digest(STYLE));
     let page = html! {
         (DOCTYPE)
         html lang="en" {
@@ -20,15 +24,61 @@ pub(super) fn page(title: &str, content: &Markup) -> Vec<u8> {
                 title { (title) }
                 style { (PreEscaped(STYLE)) }
             }
-            body { main { (content) } }
+            body {
+                main { (content) }
+                footer { "Written by thawline " (env!("CARGO_PKG_VERSION")) ". " (PLANNING_AID) }
+                @for script in scripts { script { (PreEscaped(script)) } }
+            }
         }
     };
-    page.into_string().into_bytes()
+    unbroken(&page.into_string()).into_bytes()
 }
 
-/// A figure, and how to read it.
-pub(super) fn figure(figure: &Svg) -> Markup {
-    html! { figure { div.scroll { (PreEscaped(&figure.text)) } details { summary { "How to read this figure" } p { (figure.caption) } } } }
+/// Elements whose text is not prose: drawings set theirs line by line, and code stays as it is.
+const VERBATIM: [&str; 4] = ["svg", "script", "style", "code"];
+
+/// No line of prose ends between a number and its percent or degree sign, or before an error.
+fn unbroken(page: &str) -> String {
+    let bind = |prose: &str| {
+        let signs = ["%", "°", "±"].iter().fold(prose.to_owned(), |prose, sign| {
+            prose.replace(&format!(" {sign}"), &format!("\u{a0}{sign}"))
+        });
+        signs.replace("± ", "±\u{a0}")
+    };
+    let mut bound = String::with_capacity(page.len());
+    let mut rest = page;
+    let opening = |rest: &str| {
+        let of = |name: &str| Some((rest.find(&format!("<{name}"))?, format!("</{name}>")));
+        VERBATIM.iter().filter_map(|name| of(name)).min()
+    };
+    while let Some((from, closing)) = opening(rest) {
+        let to = rest[from..].find(&closing).map_or(rest.len(), |end| from + end);
+        bound.push_str(&bind(&rest[..from]));
+        bound.push_str(&rest[from..to]);
+        rest = &rest[to..];
+    }
+    bound.push_str(&bind(rest));
+    bound
+}
+
+/// A figure, how to read it, and where it and its numbers stand as files beside the page.
+pub(super) fn figure(figure: &Svg, slug: &str, table: Option<&str>) -> Markup {
+    let file = |folder: &str, name: &str, ending: &str| format!("{folder}/{name}.{ending}");
+    html! { figure {
+        div.scroll { (PreEscaped(&figure.text)) }
+        details {
+            summary { "How to read this figure" }
+            p { (figure.caption) }
+            p {
+                @let drawing = file("figures", slug, "svg");
+                "The drawing: " a href=(drawing) { (drawing) } "."
+                @if let Some(table) = table {
+                    @let table = file("tables", table, "csv");
+                    " Its numbers: " a href=(table) { (table) } "."
+                }
+            }
+        }
+    } }
 }
 
 /// RFC 4648, for the digest in the page's policy.
@@ -49,6 +99,13 @@ fn base64(bytes: &[u8]) -> String {
 
 #[cfg(test)]
 mod tests {
+    #[test]
+    fn numbers_keep_their_signs() {
+        let page = "<p>2.0 ± 0.3 % at +2 °C</p><svg><text>5 %</text></svg><code>a % b</code> 7 %";
+        let bound = "<p>2.0\u{a0}±\u{a0}0.3\u{a0}% at +2\u{a0}°C</p><svg><text>5 %</text></svg><code>a % b</code> 7\u{a0}%";
+        assert_eq!(super::unbroken(page), bound);
+    }
+
     /// RFC 4648, section 10.
     #[test]
     fn base64_test_vectors() {

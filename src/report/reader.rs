@@ -1,10 +1,13 @@
 //! Quantities as one reader takes them: in the reader's units, rounded to what they can bear, with the unit's word.
 
-use super::numbers::{date, fixed, precision, signed, trimmed};
+use super::numbers::{Decimals, date, fixed, precision, signed, trimmed};
 use crate::basin::{GradientForm, PrecipitationGradient, TemperatureGradient};
 use crate::calendar::WaterYearStart;
 use crate::season::{Kind, Outcome};
 use crate::units::UnitSystem;
+
+/// Three figures of a volume in the reader's unit.
+pub const VOLUME_DECIMALS: Decimals = Decimals { below: &[(9.995, 2), (99.95, 1)], otherwise: 0 };
 
 /// Who reads.
 #[derive(Debug, Clone, Copy)]
@@ -48,10 +51,14 @@ impl Reader {
 
     /// Whole mm and tenths below 10 mm; tenths of an inch and hundredths below 1 in.
     fn amount_decimals(self, value_mm: f64) -> usize {
-        let size = self.units.depth().of(value_mm).abs();
+        self.depth_decimals().of(self.units.depth().of(value_mm))
+    }
+
+    /// Of a depth in the reader's unit.
+    pub fn depth_decimals(self) -> Decimals {
         match self.units {
-            UnitSystem::Metric => usize::from(size < 9.95),
-            UnitSystem::Us => 1 + usize::from(size < 0.995),
+            UnitSystem::Metric => Decimals { below: &[(9.95, 1)], otherwise: 0 },
+            UnitSystem::Us => Decimals { below: &[(0.995, 2)], otherwise: 1 },
         }
     }
 
@@ -182,7 +189,7 @@ impl Reader {
     /// The same without its unit.
     pub fn volume_bare(self, volume_hm3: f64) -> String {
         let volume = self.units.volume().of(volume_hm3);
-        fixed(volume, [9.995, 99.95].iter().map(|limit| usize::from(volume.abs() < *limit)).sum())
+        fixed(volume, VOLUME_DECIMALS.of(volume))
     }
 
     /// A measure's value in words.

@@ -64,6 +64,7 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
     }
     if let Some(surface) = &findings.surface {
         add("response-surface", response_surface::response_surface(surface, units));
+        add("response-surface-bands", response_surface::bands(surface, units));
         add("break-even-curve", response_surface::break_even_curve(surface, units));
         add("elasticities", elasticities::elasticities(surface, &study.basin.bands, units));
         if !surface.named.is_empty() {

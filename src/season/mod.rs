@@ -95,9 +95,10 @@ static FAMILIES: &[Family] = &[
     Family { list: melt::list, take: melt::take },
 ];
 
-/// The families of the snow that lies, and of when it lies and goes.
-static OF_SNOW_AND_TIMING: &[Family] = &[
+/// The families of the snow that lies, of the water that leaves it, and of when it lies and goes.
+static OF_SNOW_WATER_AND_TIMING: &[Family] = &[
     Family { list: state::list, take: state::take },
+    Family { list: outflow::list, take: outflow::take },
     Family { list: covered::list, take: covered::take },
     Family { list: melt::list, take: melt::take },
 ];
@@ -140,9 +141,9 @@ impl Measures {
         Self::of_families(&FAMILIES[..1], settings, basin_area_km2)
     }
 
-    /// The same, and when it lies and goes.
-    pub fn of_snow_and_timing(settings: SeasonSettings, basin_area_km2: f64) -> Self {
-        Self::of_families(OF_SNOW_AND_TIMING, settings, basin_area_km2)
+    /// The same, the water that leaves it, and when it lies and goes.
+    pub fn of_snow_water_and_timing(settings: SeasonSettings, basin_area_km2: f64) -> Self {
+        Self::of_families(OF_SNOW_WATER_AND_TIMING, settings, basin_area_km2)
     }
 
     /// The same, and what the air takes of the snow.

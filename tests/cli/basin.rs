@@ -64,8 +64,14 @@ impl Basin {
         fs::write(self.path().join(name), bytes).unwrap();
     }
 
+    pub fn read_bytes(&self, name: &str) -> Vec<u8> {
+        fs::read(self.path().join(name)).unwrap()
+    }
+
+    /// A text; no-break spaces of a page read as spaces.
     pub fn read(&self, name: &str) -> String {
-        fs::read_to_string(self.path().join(name)).unwrap()
+        let text = fs::read_to_string(self.path().join(name)).unwrap();
+        if name.ends_with(".html") { text.replace('\u{a0}', " ") } else { text }
     }
 
     /// The sound scenario with a piece of its text exchanged, which must be there.

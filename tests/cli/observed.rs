@@ -169,7 +169,7 @@ fn a_study_with_a_pillow_and_a_course() {
     assert_eq!(inputs, ["scenario.toml", "bands.csv", "weather.csv", "snow.csv", "course.csv"]);
     let page = basin.read("out/briefing.html");
     for said in [
-        "<h2 id=\"observed-snow\">Observed snow</h2>",
+        "<summary><h3>Observed snow</h3></summary><div class=\"inside\" id=\"observed-snow\">",
         "not fitted to these observations",
         "href=\"#observed-snow\"",
         "Lantern course",

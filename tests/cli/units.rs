@@ -209,10 +209,10 @@ fn notices_keep_the_units_of_the_scenario() {
     both(&basin);
     let page = basin.read("us/briefing.html");
     let (_, notices) = page
-        .split_once("<h3 id=\"second-look\">Worth a second look (in the scenario's metric units)</h3>")
+        .split_once("<h4 id=\"second-look\">Worth a second look (in the scenario's metric units)</h4>")
         .unwrap();
     assert!(notices.contains("outside -8 to -2 degC per km"), "{notices}");
-    assert!(basin.read("metric/briefing.html").contains("<h3 id=\"second-look\">Worth a second look</h3>"));
+    assert!(basin.read("metric/briefing.html").contains("<h4 id=\"second-look\">Worth a second look</h4>"));
 }
 
 /// A level that is no short decimal reads well, and stands in full in the tables.

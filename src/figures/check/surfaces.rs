@@ -29,6 +29,7 @@ pub fn made(measure: &Measure, [middle, change]: [f64; 2], reference_c: f64) -> 
                 change: Some(known(swe_mm - middle)),
                 change_pct: (middle >= 10.0).then(|| known(100.0 * (swe_mm / middle - 1.0))),
             }],
+            band_swe_mm: Vec::new(),
         }
     };
     let at = |warming_c: f64, precipitation_change_pct: f64| Change { warming_c, precipitation_change_pct };

@@ -16,7 +16,6 @@ pub(super) const SECOND_LOOK: &str = "second-look";
 pub(super) fn section(study: &Study<'_>) -> Markup {
     let (snow, reader) = (study.snow, study.reader);
     html! {
-        h2 { "What was assumed" }
         dl {
             dt { "Rain or snow" } dd { (rain_or_snow(reader, snow)) }
             dt { "Melt" } dd { (reader.degree_day_factors(snow.degree_day_factor_lowest, snow.degree_day_factor_highest)) " through the year"
@@ -52,13 +51,13 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
             dt { "Realizations" } dd { (generator_in_words(study.generator)) "; the same realization under every level"
                 @match study.mean_change_sd_pct { Some(sd) => { "; mean precipitation changed at random, standard deviation " (fixed(sd, 1)) " % (an assumption)" } None => {} } }
         }
-        h3 { "Defaults in force" }
+        h4 { "Defaults in force" }
         @if study.defaults.is_empty() { p { "None: the scenario states everything." } } @else {
             p { @for (at, default) in study.defaults.iter().enumerate() { @if at > 0 { ", " } code { (default.key) " = " (default.value) }
                 @if let Some(with) = default.with { " (with " code { (with) } ")" } } }
         }
         @if !study.unlikely.is_empty() {
-            h3 id=(SECOND_LOOK) { "Worth a second look" @if reader.units != UnitSystem::Metric { " (in the scenario's metric units)" } }
+            h4 id=(SECOND_LOOK) { "Worth a second look" @if reader.units != UnitSystem::Metric { " (in the scenario's metric units)" } }
             ul { @for notice in study.unlikely { li { code { (notice.about) } ": " (notice.why) } } }
         }
     }

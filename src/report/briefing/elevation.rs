@@ -14,7 +14,6 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     let (findings, reader) = (study.findings, study.reader);
     let apart = told_apart(findings.bands.iter().map(|of_band| &of_band.band));
     html! { @if let Some(headline) = findings.basin.first() {
-        h2 { "Where it is lost" }
         (figures.of(Part::Elevation))
         @if let (Some(area), Some(snow)) = (study.beyond_stations, study.swe_beyond_stations) { p {
             "Above the station lie " (fixed(100.0 * area.share_above, 0)) " % of the area and " (fixed(100.0 * snow.share_above, 0))

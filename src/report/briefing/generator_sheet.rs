@@ -17,7 +17,6 @@ const ALWAYS_TOLD: [Subject; 2] = [Subject::SurveySwe, Subject::Totals];
 /// The section; nothing without a sheet.
 pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     html! { @if let Some(sheet) = &study.findings.generator {
-        h2 id=(ADDRESS) { "Does the weather that was made look like the record?" }
         @for said in sentences(sheet, study.reader) { p { (said) } }
         (figures.of(Part::Weather))
         (table("The snow, and the years that bring it.", sheet, study.reader, |subject, _| ALWAYS_TOLD.contains(&subject)))

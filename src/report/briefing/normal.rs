@@ -11,7 +11,6 @@ use maud::{Markup, html};
 pub(super) fn section(study: &Study<'_>) -> Markup {
     let (findings, reader) = (study.findings, study.reader);
     html! { @if let Some(record) = &findings.record {
-        h2 { "Percent of median" }
         p {
             "Median: of the baseline years, " (baseline_years_in_words(&record.baseline_years)) ", at the reference, band by band. \
              A basin's percentage is its snow water over the sum of the bands' medians, not a mean of their percentages; \

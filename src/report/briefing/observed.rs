@@ -3,7 +3,7 @@
 use super::super::numbers::{DASH, counted, fixed, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
-use crate::figures::Svg;
+use crate::figures::{SITE_FIGURES, Svg};
 use crate::fit::{Bias, Comparison, DateError};
 use maud::{Markup, html};
 
@@ -11,10 +11,9 @@ use maud::{Markup, html};
 pub(super) const ADDRESS: &str = "observed-snow";
 
 /// The section; nothing without a site.
-pub(super) fn section(study: &Study<'_>, figures: &[Svg]) -> Markup {
+pub(super) fn section(study: &Study<'_>, figures: &[(String, Svg)]) -> Markup {
     let comparisons = &study.findings.comparisons;
     html! { @if !comparisons.is_empty() {
-        h2 id=(ADDRESS) { "Observed snow" }
         p {
             @if let Some(fitted) = study.fitted {
                 "Parameters of this model come from " code { (fitted.file) } ", which holds what was fitted to observed snow: scores over years that \
@@ -27,7 +26,7 @@ pub(super) fn section(study: &Study<'_>, figures: &[Svg]) -> Markup {
              water years in use. Errors are modelled less observed: above 0 the model has more snow than was observed, or keeps it longer."
         }
         (scores(comparisons, study.reader))
-        @for figure in figures { (super::figure(figure)) }
+        @for (slug, svg) in figures { (super::figure(svg, slug, Some(SITE_FIGURES[0].table))) }
         p {
             "NSE is the Nash-Sutcliffe efficiency over all readings, days without snow included: 1 is perfect, 0 no better than the observed \
              mean. KGE is the Kling-Gupta efficiency of 2009 over the readings on which observed or modelled SWE is above 0: 1 is perfect, \

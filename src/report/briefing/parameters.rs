@@ -15,7 +15,6 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
         spread.measures.iter().find(|found| found.measure == headline.measure)
     });
     html! { @if let Some(found) = found {
-        h2 { "If other parameters were right" }
         @for sentence in &answer.parameters { p { (sentence) } }
         (table(found, study.reader))
         @if let Some(sets) = study.parameter_sets { p { (sets.words()) } }

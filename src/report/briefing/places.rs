@@ -8,7 +8,6 @@ use maud::{Markup, html};
 /// The section on kinds of years; nothing where there is no cool season.
 pub(super) fn years(answer: &Answer, figures: &Figures<'_>) -> Markup {
     html! { @if let Some((first, others)) = answer.dry_and_warm.split_first() {
-        h2 { "Dry years and warm ones" }
         p { (first) }
         (figures.of(Part::DryAndWarm))
         @for sentence in others { p { (sentence) } }

@@ -14,7 +14,6 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     let counts = record.counts;
     let headline = record.measures.first();
     html! {
-        h2 { "The record" }
         (figures.of(Part::Record))
         p {
             (counts.first) " to " (counts.last) ", " (fixed(counts.days as f64, 0)) " days: " (record.years.len()) " water years in use, "
@@ -54,7 +53,7 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
             } }
         }
         @if let Some(headline) = headline {
-            h3 { "The record's own years, as the model runs them at the reference" }
+            h4 { "The record's own years, as the model runs them at the reference" }
             p {
                 (headline.title) " of the basin mean by water year"
                 @if let Some([mean, variation]) = record.headline_mean_and_variation() {

@@ -15,7 +15,6 @@ pub(super) fn section(study: &Study<'_>) -> Markup {
     let reader = study.reader;
     let told = telling_level(study.findings);
     html! { @if let Some((record, found)) = found {
-        h2 { "Remembered years, replayed" }
         p {
             "The weather of " (which(found)) ", as it was but for the warming, in this model. No chance is in it: it tells what such a year \
              would leave, and not how often one comes."

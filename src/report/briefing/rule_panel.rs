@@ -20,7 +20,6 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     let panel = findings.rule_panel.as_ref().filter(|_| has_snow);
     let told_c = telling_level(findings).map(|at| findings.levels_c[at]);
     html! { @if let Some(panel) = panel {
-        h2 { "If the model's rules were others" }
         p { (what_was_run(panel, study.reader)) }
         @if panel.alternatives_tuned == 0 {
             p { "No other rule could be tuned to the study's own snow, so that the page says nothing of other rules." }

@@ -9,10 +9,9 @@ use maud::{Markup, html};
 /// Amounts, shares and counts.
 pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
     html! {
-        h2 { "Snow, level by level" }
         ul { @for sentence in &answer.amounts { li { (sentence) } } }
         (levels::table(study, |of| !of.measure.kind.is_date() && !of.measure.is_volume))
-        h3 { "The driest and the wettest years" }
+        h4 { "The driest and the wettest years" }
         (levels::driest_and_wettest(study))
         p { "All of it, band by band, with ranges and Monte Carlo errors, stands in " code { "tables/" } " and " code { "summary.json" } "." }
     }
@@ -21,7 +20,6 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
 /// Dates.
 pub(super) fn timing(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     html! {
-        h2 { "When it lies, and when it goes" }
         (figures.of(Part::Timing))
         (levels::table(study, |of| of.measure.kind.is_date()))
     }

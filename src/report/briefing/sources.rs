@@ -39,7 +39,6 @@ const SOURCES: [(&str, &str); 24] = [
 /// The section.
 pub(super) fn section() -> Markup {
     html! {
-        h2 { "Sources of the methods" }
         dl { @for (what, who) in SOURCES { dt { (what) } dd { (who) } } }
     }
 }

@@ -18,7 +18,6 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer, figures: &Figures<'_>)
     let has_snow = findings.basin.first().is_some_and(|headline| !is_scarce(headline));
     html! {
         @if let Some(surface) = findings.surface.as_ref().filter(|_| has_snow) {
-            h2 { "Warming and precipitation together" }
             p {
                 "Runs of " (counted(surface.realizations, "realization")) ", the study's first, at " (surface.nodes.len()) " nodes: each changes all \
                  precipitation by one percentage, on top of no other change, and warms every day as the study's levels do. Wet days stay as \
@@ -26,25 +25,28 @@ pub(super) fn section(study: &Study<'_>, answer: &Answer, figures: &Figures<'_>)
             }
             (figures.of(Part::Together))
             @if !answer.slopes.is_empty() {
-                h3 { "What one degree does, and one percent" }
+                h4 { "What one degree does, and one percent" }
                 @for sentence in &answer.slopes { p { (sentence) } }
                 (slopes(study, surface))
             }
             @if !surface.named.is_empty() {
-                h3 { "Changes with a name" }
+                h4 { "Changes with a name" }
                 @for sentence in &answer.cases { p { (sentence) } }
                 (named(study, surface))
             }
         }
-        @if !answer.tipping.is_empty() {
-            h2 { "What is to hold" }
-            ul { @for sentence in &answer.tipping { li { (sentence) } } }
-            p {
-                "Criteria of the scenario, asked of the single years of all realizations at each level, linear between levels. \
-                 A level has no date: it says how much warming is too much, not when or whether it comes."
-            }
-        }
     }
+}
+
+/// The criteria of the scenario; nothing without one.
+pub(super) fn what_is_to_hold(answer: &Answer) -> Markup {
+    html! { @if !answer.tipping.is_empty() {
+        ul { @for sentence in &answer.tipping { li { (sentence) } } }
+        p {
+            "Criteria of the scenario, asked of the single years of all realizations at each level, linear between levels. \
+             A level has no date: it says how much warming is too much, not when or whether it comes."
+        }
+    } }
 }
 
 fn slopes(study: &Study<'_>, surface: &ResponseSurface) -> Markup {

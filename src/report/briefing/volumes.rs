@@ -16,7 +16,6 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
     let (findings, reader) = (study.findings, study.reader);
     let volumes: Vec<&MeasureFindings> = findings.basin.iter().filter(|of| of.measure.is_volume).collect();
     html! { @if !volumes.is_empty() {
-        h2 { "Water from the snow, and when" }
         p {
             "Volumes of single years over the basin, in " (reader.units.volume().word) ". A chance of exceedance reads from the dry side: 90 % means \
              that 9 of 10 years bring at least so much, 10 % that 1 of 10 does. Snowpack outflow is water that leaves the snow, water input \

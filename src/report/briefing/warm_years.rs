@@ -7,7 +7,7 @@ use crate::fit::SkillInShort;
 use maud::{Markup, html};
 
 /// Where the section stands.
-const ADDRESS: &str = "fitted";
+pub(super) const ADDRESS: &str = "fitted";
 
 /// A sentence under the title where the error is comparable with the effect, or may be; else nothing.
 pub(super) fn in_short(study: &Study<'_>) -> Markup {
@@ -31,7 +31,6 @@ pub(super) fn in_short(study: &Study<'_>) -> Markup {
 pub(super) fn section(study: &Study<'_>) -> Markup {
     let fitted = study.fitted.filter(|fitted| !fitted.taken.is_empty() && !fitted.skill.is_empty());
     html! { @if let Some(fitted) = fitted {
-        h2 id=(ADDRESS) { "How the fit did" }
         @if !fitted.left.is_empty() { p {
             "This study takes only a part of what was fitted, so that it runs another model than the one whose skill stands here: its own error in warm \
              winters is not known."

@@ -12,18 +12,23 @@ use maud::{Markup, html};
 pub(super) fn section(study: &Study<'_>, answer: &Answer) -> Markup {
     let findings = study.findings;
     html! { @if let Some(headline) = findings.basin.first().filter(|headline| !is_scarce(headline)) {
-        h2 { "By other yardsticks" }
         @for sentence in &answer.yardstick { p { (sentence) } }
         (table(findings, headline, study.reader))
-        @if !answer.break_even.is_empty() {
-            h2 { "What would make up for it" }
-            ul { @for sentence in &answer.break_even { li { (sentence) } } }
-            @if let Some(found) = &findings.break_even { p {
-                "Break-even precipitation, found by runs: the same " (counted(found.realizations, "realization")) " without an assumed change of mean \
-                 precipitation, every wet day changed by the same percentage, until the median " (period_name(findings, headline)) " stands \
-                 where the reference's does (" (study.reader.amount(found.reference_median)) ")."
-            } }
-        }
+    } }
+}
+
+/// How much more precipitation would; nothing where that was not asked.
+pub(super) fn make_up(study: &Study<'_>, answer: &Answer) -> Markup {
+    let findings = study.findings;
+    let headline =
+        findings.basin.first().filter(|headline| !is_scarce(headline) && !answer.break_even.is_empty());
+    html! { @if let Some(headline) = headline {
+        ul { @for sentence in &answer.break_even { li { (sentence) } } }
+        @if let Some(found) = &findings.break_even { p {
+            "Break-even precipitation, found by runs: the same " (counted(found.realizations, "realization")) " without an assumed change of mean \
+             precipitation, every wet day changed by the same percentage, until the median " (period_name(findings, headline)) " stands \
+             where the reference's does (" (study.reader.amount(found.reference_median)) ")."
+        } }
     } }
 }
 

@@ -16,7 +16,6 @@ use maud::{Markup, html};
 pub(super) fn section(study: &Study<'_>, answer: &Answer, figures: &Figures<'_>) -> Markup {
     let (findings, reader) = (study.findings, study.reader);
     html! { @if let Some(found) = &findings.by_year {
-        h2 { "Years" }
         ul { @for sentence in &answer.years { li { (sentence) } } }
         (figures.of(Part::Years))
         @if let Some(low) = &found.low_snow { (odds(findings, low, reader)) (of_record(findings, low, reader)) }

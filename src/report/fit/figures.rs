@@ -33,8 +33,8 @@ pub(super) fn drawn(report: &FitReport<'_>, not_seen: &[Comparison]) -> Drawn {
 
 impl Drawn {
     /// The figures of a part of the page.
-    pub fn of(&self, part: FitPart) -> impl Iterator<Item = &Svg> {
-        self.of_fit.iter().filter(move |(of, ..)| *of == part).map(|(.., svg)| svg)
+    pub fn of(&self, part: FitPart) -> impl Iterator<Item = (&String, &Svg)> {
+        self.of_fit.iter().filter(move |(of, ..)| *of == part).map(|(_, slug, svg)| (slug, svg))
     }
 
     /// Each as a file.

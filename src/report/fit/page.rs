@@ -25,7 +25,7 @@ pub(super) fn page(report: &FitReport<'_>, drawn: &Drawn) -> Vec<u8> {
             code { "[snow]" } ", by a path from the scenario's folder, and take out of the scenario the keys that it states itself."
         }
         h2 { "Skill in winters seen and not seen" }
-        @for figure in drawn.of(FitPart::Skill) { (page::figure(figure)) }
+        @for (slug, svg) in drawn.of(FitPart::Skill) { (page::figure(svg, slug, None)) }
         (errors::tables(report))
         p {
             "Errors are modelled less observed. NSE is the Nash-Sutcliffe efficiency over all readings, KGE the Kling-Gupta efficiency of 2009 \
@@ -41,13 +41,13 @@ pub(super) fn page(report: &FitReport<'_>, drawn: &Drawn) -> Vec<u8> {
             "Here the model has the parameters fitted on all years, these years among them: it looks better than it is in years that it has \
              not seen."
         }
-        @for figure in &drawn.of_sites { (page::figure(&figure.1)) }
+        @for (slug, svg) in &drawn.of_sites { (page::figure(svg, slug, None)) }
         p {
             "Every year stands in " code { "tables/observed-by-year.csv" } ", every day in " code { "tables/observed-daily.csv" }
             ", each winter as fits make it that have seen it and that have not in " code { "tables/fit-winters.csv" } "."
         }
         h2 { "Parameters" }
-        @for figure in drawn.of(FitPart::Parameters) { (page::figure(figure)) }
+        @for (slug, svg) in drawn.of(FitPart::Parameters) { (page::figure(svg, slug, None)) }
         (values::tables(report))
         p { (values::of_ranges(report)) }
         p {
@@ -75,7 +75,7 @@ pub(super) fn page(report: &FitReport<'_>, drawn: &Drawn) -> Vec<u8> {
         p { code { (report.origin.command) } " with seed " (report.origin.seed) " and thawline " (env!("CARGO_PKG_VERSION")) ". Input files and their SHA-256:" }
         ul { @for input in &report.origin.inputs { li { (input.role) ": " code { (input.path) } " " code { (input.sha256) } } } }
     };
-    page::page(&format!("{} – fit", report.title), &content)
+    page::page(&format!("{} – fit", report.title), &content, &[])
 }
 
 fn objective(report: &FitReport<'_>) -> &'static str {

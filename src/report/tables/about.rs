@@ -96,6 +96,7 @@ const ABOUT: &[(&str, &str)] = &[
         "response-surface",
         "Every node of warming by precipitation change: medians, changes from the reference.",
     ),
+    ("response-surface-bands", "Median SWE of every band at every node of warming by precipitation change."),
     ("rule-panel", "The headline under other rules of the model, each tuned to the same snow first."),
     ("snow-droughts", "Years of dry and of warm snow drought by level."),
     ("snow-lines", "Elevation of the snow line and of freezing by level, and their rise with warming."),

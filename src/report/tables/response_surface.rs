@@ -2,6 +2,7 @@
 
 use super::cells::{Told, estimate, finish, name, optional, write};
 use crate::findings::{CurvePoint, ResponseSurface, Stays, SurfaceNode};
+use crate::season::Kind;
 use crate::units::UnitSystem;
 use csv::Writer;
 
@@ -46,6 +47,32 @@ pub(super) fn response_surface(surface: &ResponseSurface, units: UnitSystem) -> 
     write(&mut writer, &header(surface, &[], units));
     for node in &surface.nodes {
         write(&mut writer, &cells(surface, node, units));
+    }
+    finish(writer)
+}
+
+/// One row a node of the grid and band.
+pub(super) fn bands(surface: &ResponseSurface, units: UnitSystem) -> Vec<u8> {
+    let mut writer = Writer::from_writer(Vec::new());
+    let swe = surface.measures.first().map_or_else(String::new, |headline| name(headline, units));
+    let warming = format!("warming_{}", units.warming().suffix);
+    write(
+        &mut writer,
+        &[&warming, "precipitation_change_pct", "band", &swe, "realizations"].map(str::to_owned),
+    );
+    let told = Told { units, kind: Kind::AmountMm };
+    for node in &surface.nodes {
+        let SurfaceNode { change, band_swe_mm, .. } = node;
+        for (band, mm) in (1..).zip(band_swe_mm) {
+            let row = [
+                units.warming().of(change.warming_c).to_string(),
+                change.precipitation_change_pct.to_string(),
+                format!("{band}"),
+                told.outcome(Kind::AmountMm.outcome(*mm)),
+                surface.realizations.to_string(),
+            ];
+            write(&mut writer, &row);
+        }
     }
     finish(writer)
 }

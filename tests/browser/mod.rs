@@ -1,0 +1,47 @@
+//! The page in a real browser: Debian's chromium, started from the command line.
+
+mod chromium;
+mod explorer;
+mod page;
+mod print;
+
+use crate::cli::basin::Basin;
+use chromium::Chromium;
+
+/// A study of the demo with few realizations, in a folder of its own, and a browser to look at it; nothing without a browser.
+fn page_of(scenario: &str, edit: impl Fn(String) -> String) -> Option<(Chromium, Basin)> {
+    let browser = Chromium::find()?;
+    let basin = Basin::new();
+    let ended = basin.run("start .");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    let text = basin.read(&format!("scenarios/{scenario}.toml")).replace("../demo-data", "demo-data");
+    let few = text.replacen("[realizations]\n", "[realizations]\ncount = 24\nyears = 6\n", 1);
+    basin.write("mine.toml", &edit(few));
+    let ended = basin.run("study mine.toml --quiet --into out");
+    assert_eq!(ended.status, 0, "{}", ended.stderr);
+    Some((browser, basin))
+}
+
+/// The page without its policy, with another script at its end that leaves what it finds as JSON, as the browser has it.
+fn probed(
+    browser: &Chromium,
+    basin: &Basin,
+    (probe, address): (&str, &str),
+    width_px: u32,
+) -> serde_json::Value {
+    let page = basin.read_bytes("out/briefing.html");
+    let page = String::from_utf8(page).unwrap();
+    let (before, rest) = page.split_once("<meta http-equiv=\"Content-Security-Policy\"").unwrap();
+    let (_, rest) = rest.split_once('>').unwrap();
+    let script = format!(
+        "<pre id=\"probe\"></pre><script>addEventListener('load', () => {{ const found = (() => {{ {probe} }})(); \
+         document.getElementById('probe').textContent = JSON.stringify(found); }});</script></body>"
+    );
+    basin.write("out/probed.html", &format!("{before}{}", rest.replace("</body>", &script)));
+    let shown = browser.dump(&basin.path().join("out/probed.html"), address, width_px);
+    let (_, found) = shown.dom.rsplit_once("<pre id=\"probe\">").unwrap();
+    let (found, _) = found.split_once("</pre>").unwrap();
+    let found =
+        found.replace("&lt;", "<").replace("&gt;", ">").replace("&nbsp;", "\u{a0}").replace("&amp;", "&");
+    serde_json::from_str(&found).unwrap_or_else(|error| panic!("{error}: {found:?}; {:?}", shown.console))
+}

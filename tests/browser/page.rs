@@ -1,0 +1,99 @@
+//! The page as it is laid out: nothing fetched, nothing wider than a telephone, every letter dark enough.
+
+use super::{page_of, probed};
+use serde_json::Value;
+
+/// Opens every part, then measures.
+const PROBE: &str = r##"
+    for (const details of document.querySelectorAll("details")) details.open = true;
+    const rgb = (colour) => colour.match(/[\d.]+/g).map(Number);
+    const ground = (element) => {
+        for (let e = element; e; e = e.parentElement) {
+            const colour = rgb(getComputedStyle(e).backgroundColor);
+            if (colour.length < 4 || colour[3] === 1) return colour;
+            if (colour[3] > 0) throw new Error("a ground that is not opaque");
+        }
+        return [255, 255, 255];
+    };
+    const light = (colour) => colour.slice(0, 3).map((c) => c / 255).map((c) => (c <= 0.04045 ? c / 12.92 : ((c + 0.055) / 1.055) ** 2.4))
+        .reduce((sum, c, at) => sum + [0.2126, 0.7152, 0.0722][at] * c, 0);
+    const contrast = (a, b) => { const [low, high] = [light(a), light(b)].sort((x, y) => x - y); return (high + 0.05) / (low + 0.05); };
+    const texts = [...document.body.querySelectorAll("*")].filter((e) => !["SCRIPT", "STYLE", "title", "desc"].includes(e.tagName)
+        && [...e.childNodes].some((node) => node.nodeType === 3 && node.data.trim()));
+    const ratio = (e) => { const style = getComputedStyle(e); return contrast(rgb(e.ownerSVGElement ? style.fill : style.color), ground(e)); };
+    const least = texts.map((e) => [ratio(e), e.textContent.slice(0, 60)]).sort((a, b) => a[0] - b[0])[0];
+    const small = [...document.querySelectorAll("button, input, summary, nav a")].filter((e) => { const box = e.getBoundingClientRect(); return box.width < 24 || box.height < 24; });
+    const ids = [...document.querySelectorAll("[id]")].map((e) => e.id);
+    return {
+        wide: document.documentElement.scrollWidth - innerWidth,
+        width: innerWidth,
+        texts: texts.length,
+        least,
+        small: small.map((e) => e.outerHTML.slice(0, 80)),
+        headings: [...document.querySelectorAll("h1, h2, h3, h4")].map((e) => Number(e.tagName[1])),
+        twice: ids.filter((id, at) => ids.indexOf(id) !== at),
+        astray: [...document.querySelectorAll('a[href^="#"]')].map((a) => a.hash.slice(1)).filter((id) => !document.getElementById(id)),
+        files: [...document.querySelectorAll("a[href]")].map((a) => a.getAttribute("href")).filter((href) => !href.startsWith("#")),
+        bare_tables: [...document.querySelectorAll("table")].filter((table) => !table.caption || [...table.querySelectorAll("th")].some((th) => !th.scope)).length,
+        unnamed_figures: [...document.querySelectorAll("figure svg")].filter((svg) => svg.getAttribute("role") !== "img"
+            || svg.getAttribute("aria-labelledby").split(" ").some((id) => !document.getElementById(id)?.textContent)).length,
+        unnamed_inputs: [...document.querySelectorAll("input")].filter((input) => !input.labels.length && !input.ariaLabel).length,
+        landmarks: ["main", "nav", "footer"].map((name) => document.querySelectorAll(name).length),
+        language: document.documentElement.lang,
+    };
+"##;
+
+fn empty(list: &Value) -> bool {
+    list.as_array().unwrap().is_empty()
+}
+
+/// WCAG 2.2: 1.4.3 (4.5 to 1), 1.4.10 (no sideways scroll at 320 px), 2.5.8 (24 px), 1.3.1, 2.4.1 and 3.1.1.
+fn is_sound(scenario: &str) {
+    let Some((browser, basin)) = page_of(scenario, |scenario| scenario) else { return };
+    let shown = browser.dump(&basin.path().join("out/briefing.html"), "", 1000);
+    assert!(shown.console.is_empty(), "{:?}", shown.console);
+    for width_px in [320, 360, 1000] {
+        let found = probed(&browser, &basin, (PROBE, ""), width_px);
+        assert_eq!(found["width"], width_px);
+        assert!(found["wide"].as_f64().unwrap() <= 0.0, "{width_px} px: {}", found["wide"]);
+        assert!(found["texts"].as_u64().unwrap() > 500, "{}", found["texts"]);
+        assert!(found["least"][0].as_f64().unwrap() >= 4.5, "{}", found["least"]);
+        for of in ["small", "twice", "astray"] {
+            assert!(empty(&found[of]), "{of}: {}", found[of]);
+        }
+        for of in ["bare_tables", "unnamed_figures", "unnamed_inputs"] {
+            assert_eq!(found[of], 0, "{of}");
+        }
+        let headings: Vec<i64> =
+            found["headings"].as_array().unwrap().iter().map(|of| of.as_i64().unwrap()).collect();
+        assert_eq!(headings[0], 1);
+        assert!(headings.windows(2).all(|pair| pair[1] <= pair[0] + 1), "{headings:?}");
+        assert_eq!(found["landmarks"], serde_json::json!([1, 1, 1]));
+        assert_eq!(found["language"], "en");
+        for file in found["files"].as_array().unwrap() {
+            assert!(basin.path().join("out").join(file.as_str().unwrap()).is_file(), "{file}");
+        }
+    }
+    // The same on a dark page, whose colours another rule sets.
+    let page = String::from_utf8(basin.read_bytes("out/briefing.html")).unwrap();
+    let rule = "screen and (prefers-color-scheme: dark)";
+    assert!(page.contains(rule));
+    basin.write("out/briefing.html", &page.replace(rule, "all"));
+    let found = probed(&browser, &basin, (PROBE, ""), 1000);
+    assert!(found["least"][0].as_f64().unwrap() >= 4.5, "dark: {}", found["least"]);
+}
+
+#[test]
+fn the_demo_is_sound() {
+    is_sound("alder-fork");
+}
+
+#[test]
+fn the_cold_basin_is_sound() {
+    is_sound("frostbell-creek");
+}
+
+#[test]
+fn the_basin_in_us_units_is_sound() {
+    is_sound("tamsin-river");
+}
