@@ -236,13 +236,12 @@ fn paint(told: &Told<'_>, places: &Places, setting: &Setting<'_>) -> Drawn<Strin
             }
             Ok(())
         })?;
-        names.push((sentence(&name(findings, *at, units)), ink, marking));
+        names.push((sentence(&name(findings, *at, units)), marking));
     }
     let mut x = left + 8.0;
-    for (words, ink, marking) in names {
+    for (words, marking) in names {
         marker(&sheet, (x, top - 14.0), marking)?;
-        let lettering = super::theme::Lettering { ink, ..NAME };
-        sheet.write(&words, (x + 9.0, top - 14.0), lettering, HPos::Left, VPos::Center)?;
+        sheet.write(&words, (x + 9.0, top - 14.0), NAME, HPos::Left, VPos::Center)?;
         x += NAME.width(&words) + 30.0;
     }
     key.write(&sheet, bottom + 60.0)?;

@@ -39,9 +39,9 @@ impl Chromium {
     }
 
     /// The document after its scripts have run.
-    pub fn dump(&self, page: &Path, address: &str, width_px: u32) -> Shown {
+    pub fn dump(&self, page: &Path, width_px: u32) -> Shown {
         let size = format!("--window-size={width_px},1000");
-        let ended = self.run(page, address, &["--virtual-time-budget=3000", &size, "--dump-dom"]);
+        let ended = self.run(page, &["--virtual-time-budget=3000", &size, "--dump-dom"]);
         let said = String::from_utf8_lossy(&ended.stderr);
         let console = said.lines().filter(|line| line.contains("CONSOLE")).map(str::to_owned).collect();
         Shown { dom: String::from_utf8(ended.stdout).unwrap(), console }
@@ -50,13 +50,13 @@ impl Chromium {
     /// The page as a PDF.
     pub fn print(&self, page: &Path) -> Vec<u8> {
         let file = self.profile.path().join("printed.pdf");
-        self.run(page, "", &[&format!("--print-to-pdf={}", file.display())]);
+        self.run(page, &[&format!("--print-to-pdf={}", file.display())]);
         std::fs::read(file).unwrap()
     }
 
-    fn run(&self, page: &Path, address: &str, flags: &[&str]) -> std::process::Output {
+    fn run(&self, page: &Path, flags: &[&str]) -> std::process::Output {
         let profile = format!("--user-data-dir={}", self.profile.path().join("profile").display());
-        let url = format!("file://{}{address}", page.display());
+        let url = format!("file://{}", page.display());
         Command::new(&self.program)
             .args([
                 "--headless=new",
@@ -86,8 +86,8 @@ fn faults_of_a_page_are_seen() {
         "<meta http-equiv=\"Content-Security-Policy\" content=\"default-src 'none'\"><img src=\"http://example.org/a.png\">",
     ] {
         std::fs::write(&page, format!("<!DOCTYPE html>{fault}<p>text</p>")).unwrap();
-        assert_eq!(browser.dump(&page, "", 800).console.len(), 1, "{fault}");
+        assert_eq!(browser.dump(&page, 800).console.len(), 1, "{fault}");
     }
     std::fs::write(&page, "<!DOCTYPE html><p>text</p>").unwrap();
-    assert!(browser.dump(&page, "", 800).console.is_empty());
+    assert!(browser.dump(&page, 800).console.is_empty());
 }

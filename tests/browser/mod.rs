@@ -7,6 +7,7 @@ mod print;
 
 use crate::cli::basin::Basin;
 use chromium::Chromium;
+use serde_json::Value;
 
 /// A study of the demo with few realizations, in a folder of its own, and a browser to look at it; nothing without a browser.
 fn page_of(scenario: &str, edit: impl Fn(String) -> String) -> Option<(Chromium, Basin)> {
@@ -22,24 +23,25 @@ fn page_of(scenario: &str, edit: impl Fn(String) -> String) -> Option<(Chromium,
     Some((browser, basin))
 }
 
-/// The page without its policy, with another script at its end that leaves what it finds as JSON, as the browser has it.
-fn probed(
-    browser: &Chromium,
-    basin: &Basin,
-    (probe, address): (&str, &str),
-    width_px: u32,
-) -> serde_json::Value {
-    let page = basin.read_bytes("out/briefing.html");
-    let page = String::from_utf8(page).unwrap();
+/// The page without its policy, in a frame of so many px, with another script at its end that tells the frame's page what it finds.
+/// (A window of its own would be no narrower than 500 px.)
+fn probed(browser: &Chromium, basin: &Basin, (probe, address): (&str, &str), width_px: u32) -> Value {
+    let page = String::from_utf8(basin.read_bytes("out/briefing.html")).unwrap();
     let (before, rest) = page.split_once("<meta http-equiv=\"Content-Security-Policy\"").unwrap();
     let (_, rest) = rest.split_once('>').unwrap();
     let script = format!(
-        "<pre id=\"probe\"></pre><script>addEventListener('load', () => {{ const found = (() => {{ {probe} }})(); \
-         document.getElementById('probe').textContent = JSON.stringify(found); }});</script></body>"
+        "<script>addEventListener('load', () => {{ const found = (() => {{ {probe} }})(); \
+         parent.postMessage(JSON.stringify(found), '*'); }});</script></body>"
     );
     basin.write("out/probed.html", &format!("{before}{}", rest.replace("</body>", &script)));
-    let shown = browser.dump(&basin.path().join("out/probed.html"), address, width_px);
-    let (_, found) = shown.dom.rsplit_once("<pre id=\"probe\">").unwrap();
+    let frame = format!(
+        "<!DOCTYPE html><pre id=\"probe\"></pre><script>addEventListener('message', (told) => {{ \
+         document.getElementById('probe').textContent = told.data; }});</script>\
+         <iframe style=\"width: {width_px}px; height: 900px; border: 0\" src=\"probed.html{address}\"></iframe>"
+    );
+    basin.write("out/frame.html", &frame);
+    let shown = browser.dump(&basin.path().join("out/frame.html"), 1200);
+    let (_, found) = shown.dom.split_once("<pre id=\"probe\">").unwrap();
     let (found, _) = found.split_once("</pre>").unwrap();
     let found =
         found.replace("&lt;", "<").replace("&gt;", ">").replace("&nbsp;", "\u{a0}").replace("&amp;", "&");

@@ -7,7 +7,21 @@ use serde_json::Value;
 const PROBE: &str = r##"
     for (const details of document.querySelectorAll("details")) details.open = true;
     const rgb = (colour) => colour.match(/[\d.]+/g).map(Number);
+    // Of a drawing's text, the last shape drawn before it that holds its middle.
+    const shapes = new Map();
+    const drawn = (svg) => {
+        if (!shapes.has(svg)) shapes.set(svg, [...svg.querySelectorAll("rect, circle, polygon, path")].map((shape) => ({ shape, fill: getComputedStyle(shape).fill, box: shape.getBBox() })).filter(({ fill }) => fill !== "none"));
+        return shapes.get(svg);
+    };
+    const under = (text) => {
+        const box = text.getBBox();
+        const [x, y] = [box.x + box.width / 2, box.y + box.height / 2];
+        const holds = ({ shape, box }) => x >= box.x && x <= box.x + box.width && y >= box.y && y <= box.y + box.height
+            && shape.compareDocumentPosition(text) & Node.DOCUMENT_POSITION_FOLLOWING;
+        return drawn(text.ownerSVGElement).findLast(holds);
+    };
     const ground = (element) => {
+        if (element.ownerSVGElement) return rgb(under(element).fill);
         for (let e = element; e; e = e.parentElement) {
             const colour = rgb(getComputedStyle(e).backgroundColor);
             if (colour.length < 4 || colour[3] === 1) return colour;
@@ -50,7 +64,7 @@ fn empty(list: &Value) -> bool {
 /// WCAG 2.2: 1.4.3 (4.5 to 1), 1.4.10 (no sideways scroll at 320 px), 2.5.8 (24 px), 1.3.1, 2.4.1 and 3.1.1.
 fn is_sound(scenario: &str) {
     let Some((browser, basin)) = page_of(scenario, |scenario| scenario) else { return };
-    let shown = browser.dump(&basin.path().join("out/briefing.html"), "", 1000);
+    let shown = browser.dump(&basin.path().join("out/briefing.html"), 1000);
     assert!(shown.console.is_empty(), "{:?}", shown.console);
     for width_px in [320, 360, 1000] {
         let found = probed(&browser, &basin, (PROBE, ""), width_px);

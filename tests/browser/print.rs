@@ -28,7 +28,7 @@ fn print_holds_all_parts() {
     );
     assert!(String::from_utf8_lossy(&printed).contains("/StructTreeRoot"));
 
-    let shown = browser.dump(&unscripted_page, "", 900);
+    let shown = browser.dump(&unscripted_page, 900);
     assert_eq!(shown.console.len(), 2, "both scripts are refused: {:?}", shown.console);
     assert!(!shown.dom.contains("<details class=\"part\">"), "all parts stand open");
     assert!(shown.dom.contains("<div id=\"explorer-tool\" hidden"));
