@@ -89,6 +89,7 @@ pub(super) enum Colour {
 
 /// Flags that every command takes.
 #[derive(Debug, Args)]
+#[command(next_help_heading = "Options of every command")]
 pub(super) struct Shared {
     /// Threads; all cores if left out. Results are the same on any number
     #[arg(long, global = true, value_name = "N", value_parser = clap::value_parser!(u16).range(1..=1024))]

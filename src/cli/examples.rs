@@ -29,8 +29,8 @@ const STUDY: [Example; 3] = [
         "figures, tables and a briefing, into output/alder-fork/",
     ),
     example(
-        "thawline study scenarios/alder-fork.toml --seed 7 --into seed-7 --open",
-        "the same with other random numbers, opened in your browser",
+        "thawline study scenarios/frostbell-creek.toml --into frostbell --open",
+        "another basin, into frostbell/, its briefing opened in your browser",
     ),
     example(
         "thawline study scenarios/alder-fork.toml --json > done.json",

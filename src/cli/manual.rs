@@ -105,9 +105,12 @@ fn examples(heading: &str, examples: &[Example]) -> String {
         "SH" => roff.control("SH", ["EXAMPLES"]),
         _ => roff.control("PP", []).text([roman("Examples:")]),
     };
+    // As they are typed: a line that is filled or broken is another command.
+    roff.control("nf", []);
     for Example { typed, does } in examples {
-        entry(&mut roff, bold(format!("$ {typed}")), does);
+        roff.text([bold(format!("$ {typed}"))]).text([roman(format!("    {does}"))]);
     }
+    roff.control("fi", []);
     roff.to_roff()
 }
 
