@@ -60,12 +60,7 @@ pub(super) fn instead_of_a_command(error: &clap::Error) -> u8 {
     let typed: Vec<OsString> = std::env::args_os().collect();
     let is_help = matches!(error.kind(), ErrorKind::DisplayHelp | ErrorKind::DisplayVersion);
     if !is_help && typed.iter().any(|word| word == "--json") {
-        let message = match error.kind() {
-            ErrorKind::DisplayHelpOnMissingArgumentOrSubcommand => {
-                "no command was given; `thawline help` lists them".to_owned()
-            }
-            _ => error.render().to_string().trim_end().to_owned(),
-        };
+        let message = error.render().to_string().trim_end().to_owned();
         return last_words::document(&Failure::CommandLine(message));
     }
     let is_terminal = if is_help { std::io::stdout().is_terminal() } else { std::io::stderr().is_terminal() };

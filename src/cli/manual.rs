@@ -49,11 +49,11 @@ pub(super) fn run(shared: &Shared) -> Result<(), Failure> {
 fn page() -> io::Result<String> {
     let command = help::command();
     let whole = Man::new(command.clone().disable_help_subcommand(true)).manual("thawline");
-    let mut page = Vec::new();
-    whole.render_title(&mut page)?;
-    whole.render_name_section(&mut page)?;
-    whole.render_synopsis_section(&mut page)?;
-    let mut text = in_utf8(page)?;
+    let mut title = Vec::new();
+    whole.render_title(&mut title)?;
+    let mut text = in_utf8(title)?;
+    text += &part_of(|page| whole.render_name_section(page), "NAME", ".SH NAME\n")?;
+    text += &part_of(|page| whole.render_synopsis_section(page), "SYNOPSIS", ".SH SYNOPSIS\n")?;
     text += &examples("SH", &OF_THE_PROGRAM);
     text += &part_of(|page| whole.render_options_section(page), "OPTIONS", ".SH OPTIONS\n")?;
     text += &Roff::new().control("SH", ["COMMANDS"]).to_roff();

@@ -61,7 +61,7 @@ fn of_what_failed() {
     let basin = Basin::new();
     basin.write("taken", "a file where a folder is wanted");
     let cases = [
-        ("", 2, "thawline help"),
+        ("", 2, "requires a subcommand"),
         ("stduy scenario.toml", 2, "study"),
         ("study", 2, "<SCENARIO>"),
         ("study nowhere.toml", 3, "1 fault"),

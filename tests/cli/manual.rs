@@ -19,9 +19,10 @@ fn every_command_and_flag_of_help_is_in_it() {
     }
     let mut flags = BTreeSet::new();
     for (_, page) in pages() {
+        // What help says of a flag stands farther in.
         let of_options =
-            page.lines().map(str::trim).filter(|line| line.starts_with('-') && !line.starts_with("- "));
-        flags.extend(of_options.map(|line| line.split("  ").next().unwrap().trim().to_owned()));
+            page.lines().filter(|line| line.trim_start().starts_with('-') && !line.starts_with("       "));
+        flags.extend(of_options.map(|line| line.trim().split("  ").next().unwrap().to_owned()));
     }
     assert!(flags.len() >= 14, "{flags:?}");
     for flag in flags {
