@@ -50,7 +50,9 @@ fn of_what_was_done() {
             .map(|(name, _)| name.into())
             .collect();
         let mut files = files.clone();
-        [&mut files, &mut there].map(|names| names.sort_by_key(Value::to_string));
+        for names in [&mut files, &mut there] {
+            names.sort_by_key(Value::to_string);
+        }
         assert_eq!(files, there, "{words}");
     }
     assert_eq!(document(&basin.run("check scenario.toml --json"), "check")["status"], "checked");
@@ -83,7 +85,9 @@ fn of_what_failed() {
     ];
     for (words, status, said) in cases {
         let ended = basin.run(&format!("{words} --json"));
-        assert_eq!((ended.status, ended.stderr.as_str()), (status, ""), "thawline {words}");
+        assert_eq!(ended.status, status, "thawline {words}");
+        // Warnings stand there as they do in a run that is done; what failed stands in the document alone.
+        assert!(!ended.stderr.contains("error"), "thawline {words}: {}", ended.stderr);
         let document = document(&ended, words);
         assert_eq!(
             (&document["status"], &document["exit_status"]),
