@@ -2,26 +2,14 @@
 
 use super::daily::WaterYears;
 use clap::{Args, Parser, Subcommand, ValueEnum};
+use clap_complete::Shell;
+use std::ffi::OsStr;
 use std::io::IsTerminal;
 use std::path::PathBuf;
 
-const EXAMPLES: &str = "\
-Examples:
-  $ thawline study scenarios/alder-fork.toml
-      figures, tables and a briefing into output/alder-fork/
-  $ thawline check scenarios/alder-fork.toml
-      what would be used, and what was found in the record
-  $ thawline daily scenarios/alder-fork.toml > alder-fork-daily.csv
-      every day of every band of the record, without any warming
-
-Exit status: 0 done, 1 a fault of thawline, 2 command line, 3 the scenario or
-its data, 4 the file system, 130 interrupted.
-
-A planning aid: not for flood forecasting or the operation of dams.";
-
 /// How much snow water is left, and how much earlier it melts, as a basin warms.
 #[derive(Debug, Parser)]
-#[command(name = "thawline", version, after_help = EXAMPLES, max_term_width = 80, propagate_version = true)]
+#[command(name = "thawline", version, max_term_width = 80, propagate_version = true)]
 pub(super) struct Arguments {
     #[command(flatten)]
     pub shared: Shared,
@@ -31,10 +19,13 @@ pub(super) struct Arguments {
 
 #[derive(Debug, Subcommand)]
 pub(super) enum Command {
-    /// Run every realization under every warming level; leave figures, tables and a briefing
+    /// Run every realization under every level; leave figures, tables and a briefing
     Study {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
+        /// Open the briefing in your browser once it is written; not with --json
+        #[arg(long)]
+        open: bool,
     },
     /// Run the record as observed; daily states and fluxes of every band as CSV
     Daily {
@@ -47,12 +38,15 @@ pub(super) enum Command {
         #[arg(long, value_name = "PLACE", requires = "draw_years")]
         draw_band: Option<String>,
     },
-    /// Search for parameters that bring the model nearest to observed snow; judge them on winters not seen
+    /// Search for parameters nearest to observed snow; judge them on winters not seen
     Fit {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
+        /// Open the page in your browser once it is written; not with --json
+        #[arg(long)]
+        open: bool,
     },
-    /// Write station weather, day by day, as CSV: the record as realizations are made from it, or a realization
+    /// Write station weather, day by day, as CSV: the record, or a realization of it
     Weather {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
@@ -73,6 +67,13 @@ pub(super) enum Command {
         /// The folder to write into
         folder: PathBuf,
     },
+    /// Write completions of commands and flags for a shell, to standard output
+    Completions {
+        /// The shell that is to complete them
+        shell: Shell,
+    },
+    /// Write the manual page, for man, to standard output
+    Manual,
 }
 
 /// When to colour.
@@ -88,6 +89,7 @@ pub(super) enum Colour {
 
 /// Flags that every command takes.
 #[derive(Debug, Args)]
+#[command(next_help_heading = "Options of every command")]
 pub(super) struct Shared {
     /// Threads; all cores if left out. Results are the same on any number
     #[arg(long, global = true, value_name = "N", value_parser = clap::value_parser!(u16).range(1..=1024))]
@@ -107,7 +109,7 @@ pub(super) struct Shared {
     /// Colour in messages
     #[arg(long, global = true, value_enum, default_value_t = Colour::Auto)]
     pub color: Colour,
-    /// One JSON document on standard output in place of the words, on failure too
+    /// One JSON document on standard output in place of the words, on failure too; daily and weather need --into with it
     #[arg(long, global = true)]
     pub json: bool,
 }
@@ -115,12 +117,46 @@ pub(super) struct Shared {
 impl Shared {
     /// Whether messages on standard error are coloured.
     pub fn is_coloured(&self) -> bool {
-        let is_set = |name: &str| std::env::var_os(name).is_some_and(|value| !value.is_empty());
-        let is_dumb = std::env::var_os("TERM").is_some_and(|term| term == "dumb");
-        match self.color {
-            Colour::Always => true,
-            Colour::Never => false,
-            Colour::Auto => std::io::stderr().is_terminal() && !is_set("NO_COLOR") && !is_dumb,
+        self.color.is_used(std::io::stderr().is_terminal())
+    }
+}
+
+impl Colour {
+    /// Whether to colour what goes to a terminal, or to anything else.
+    pub fn is_used(self, is_terminal: bool) -> bool {
+        let [no_color, term] = ["NO_COLOR", "TERM"].map(std::env::var_os);
+        self.is_used_with(is_terminal, no_color.as_deref(), term.as_deref())
+    }
+
+    /// `NO_COLOR` counts where it is set and not empty (no-color.org); a dumb terminal knows no colours.
+    fn is_used_with(self, is_terminal: bool, no_color: Option<&OsStr>, term: Option<&OsStr>) -> bool {
+        match self {
+            Self::Always => true,
+            Self::Never => false,
+            Self::Auto => is_terminal && no_color.is_none_or(OsStr::is_empty) && !is_dumb(term),
         }
+    }
+}
+
+/// Whether a terminal says that it can do nothing but print lines.
+pub(super) fn is_dumb(term: Option<&OsStr>) -> bool {
+    term.is_some_and(|term| term == "dumb")
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    /// The convention of no-color.org: present and not empty means no colour, whatever its value; empty is as if it were unset.
+    #[test]
+    fn who_asks_for_no_colour_gets_none() {
+        let auto = |no_color: Option<&str>, term: Option<&str>| {
+            Colour::Auto.is_used_with(true, no_color.map(OsStr::new), term.map(OsStr::new))
+        };
+        assert!(auto(None, None) && auto(Some(""), Some("xterm")));
+        assert!(!auto(Some("1"), None) && !auto(Some("0"), None) && !auto(None, Some("dumb")));
+        assert!(!Colour::Auto.is_used_with(false, None, Some(OsStr::new("xterm"))));
+        assert!(!Colour::Never.is_used_with(true, None, None));
+        assert!(Colour::Always.is_used_with(false, Some(OsStr::new("1")), Some(OsStr::new("dumb"))));
     }
 }

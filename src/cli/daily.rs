@@ -6,6 +6,7 @@ pub(super) use picture::{Asked, WaterYears};
 
 use super::arguments::Shared;
 use super::assemble::assemble;
+use super::done::{Done, NoMore, names_of};
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::progress::{is_interrupted, mind_interrupts};
@@ -24,9 +25,7 @@ use std::path::Path;
 
 /// Runs the command: to standard output, or into `daily.csv` of the folder that `--into` names.
 pub(super) fn run(path: &Path, asked: Option<&Asked>, shared: &Shared) -> Result<(), Failure> {
-    if shared.json {
-        return Err(Failure::CommandLine("--json is not for daily, whose output is a CSV table".to_owned()));
-    }
+    output::may_be_document("daily", shared)?;
     if asked.is_some() && shared.into.is_none() {
         return Err(Failure::CommandLine(
             "--draw-years leaves a figure, and a figure needs a folder: add --into DIR".to_owned(),
@@ -69,6 +68,10 @@ pub(super) fn run(path: &Path, asked: Option<&Asked>, shared: &Shared) -> Result
             return Err(Failure::Interrupted);
         }
         publish(&files, into).map_err(|error| unpublished(&error))?;
+        if shared.json {
+            let title = Some(ready.scenario.title.as_str());
+            return output::print_json(&Done::new("daily", title, into, names_of(&files), NoMore {}));
+        }
         if !shared.quiet {
             say(&comparisons, &ready);
             output::complain(&picture.as_ref().and_then(Picture::left_out).unwrap_or_default());

@@ -21,6 +21,16 @@ pub mod status {
     pub const FILE_SYSTEM: u8 = 4;
     /// Interrupted.
     pub const INTERRUPTED: u8 = 130;
+
+    /// Each with what it means, as help and manual say it.
+    pub const MEANINGS: [(u8, &str); 6] = [
+        (DONE, "done"),
+        (OURS, "a fault of thawline's own; please report it"),
+        (COMMAND_LINE, "the command line asks for what cannot be"),
+        (INPUT, "the scenario or its data, a missing file of data included"),
+        (FILE_SYSTEM, "the file system: something could not be written"),
+        (INTERRUPTED, "interrupted; earlier results stand as they were"),
+    ];
 }
 
 /// Why a command did not do what it was asked.

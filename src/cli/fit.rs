@@ -4,6 +4,9 @@ mod told;
 
 use super::arguments::Shared;
 use super::assemble::assemble;
+use super::browser;
+use super::done::{Done, names_of};
+use super::ending::Ending;
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::pool::in_pool;
@@ -11,26 +14,28 @@ use super::progress::{Progress, is_interrupted, mind_interrupts};
 use super::ready::Ready;
 use crate::fault::Fault;
 use crate::fit::{FitEnd, Held, LEAST_WINTERS, LeftOut, Plan, Site, Value, fit, left_out, without};
-use crate::report::{FitReport, SCHEMA_VERSION, fit_files, fit_in_words, left_out_lines, publish};
+use crate::report::numbers::counted;
+use crate::report::{FitReport, fit_files, fit_in_words, left_out_lines, publish};
 use serde::Serialize;
 use std::collections::BTreeSet;
 use std::path::{Path, PathBuf};
+use std::time::Instant;
 use told::Told;
 
+/// The file of the results that is to be looked at first.
+const PAGE: &str = "fit.html";
+
+/// What the document says beside the files.
 #[derive(Serialize)]
-struct Done<'a> {
-    schema_version: u32,
-    program: &'static str,
-    status: &'static str,
-    title: &'a str,
-    into: String,
-    files: Vec<&'a str>,
+struct Found<'a> {
     parameters: &'a [Value],
     not_identified: &'a [&'static str],
 }
 
-/// Runs the command.
-pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
+/// Runs the command; with the page opened at its end, if that is asked for.
+pub(super) fn run(path: &Path, open: bool, shared: &Shared) -> Result<(), Failure> {
+    let began = Instant::now();
+    browser::may_open(open, shared)?;
     let progress = Progress::new(shared);
     let ready = assemble(path, shared)?;
     mind_interrupts();
@@ -112,23 +117,39 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     }
     may_be_replaced(&target, "fit", shared)?;
     publish(&files, &target).map_err(|error| unpublished(&error))?;
+    let parameters = &result.fitted[0].values;
     if shared.json {
-        return output::print_json(&Done {
-            schema_version: SCHEMA_VERSION,
-            program: "thawline",
-            status: "done",
-            title: &scenario.title,
-            into: target.display().to_string(),
-            files: files.iter().map(|(name, _)| name.as_str()).collect(),
-            parameters: &result.fitted[0].values,
-            not_identified: &result.not_identified,
-        });
+        let more = Found { parameters, not_identified: &result.not_identified };
+        let title = Some(scenario.title.as_str());
+        return output::print_json(&Done::new("fit", title, &target, names_of(&files), more));
+    }
+    if open {
+        browser::open(&target.join(PAGE));
     }
     if !shared.quiet {
-        let page = target.join("fit.html");
-        output::complain(&format!("{pace}\n{}page: {}\n", fit_in_words(&report), page.display()));
+        output::complain(&format!("{pace}\n{}", fit_in_words(&report)));
+        let ending = Ending {
+            answer: &fitted_in_words(parameters.len(), result.not_identified.len(), sites.len()),
+            folder: &target,
+            first: PAGE,
+            second_looks: ready.unlikely.len() + left_out.len(),
+            said_where: "said above as the fit began",
+            began,
+        };
+        ending.say();
     }
     Ok(())
+}
+
+/// `3 parameters fitted to the snow of 2 sites; 1 that it does not tell was left as it was`.
+fn fitted_in_words(parameters: usize, left: usize, sites: usize) -> String {
+    let fitted =
+        format!("{} fitted to the snow of {}", counted(parameters, "parameter"), counted(sites, "site"));
+    match left {
+        0 => fitted,
+        1 => format!("{fitted}; 1 that it does not tell was left as it was"),
+        left => format!("{fitted}; {left} that it does not tell were left as they were"),
+    }
 }
 
 /// `; the record is at fault in these, which no fit sees: 1990 at pillow (gauge against pillow)`; nothing where no rule found any.

@@ -18,11 +18,14 @@ struct FailureDocument<'a> {
 
 /// Says what failed, on standard error, or as a document on standard output; gives the exit status.
 pub(super) fn say(failure: &Failure, shared: &Shared) -> u8 {
+    let is_pipe = matches!(failure, Failure::ClosedPipe);
+    if shared.json && !is_pipe { document(failure) } else { on_standard_error(failure) }
+}
+
+/// Says what failed on standard error; gives the exit status.
+pub(super) fn on_standard_error(failure: &Failure) -> u8 {
     if matches!(failure, Failure::ClosedPipe) {
         return failure.exit_status();
-    }
-    if shared.json {
-        return document(failure);
     }
     let text = match failure {
         Failure::Input { drawn, .. } => drawn.clone(),

@@ -1,6 +1,7 @@
 //! `thawline start`: the demo scenarios and their invented data, ready to run.
 
 use super::arguments::Shared;
+use super::done::{Done, NoMore};
 use super::failure::Failure;
 use super::output;
 use std::fs;
@@ -27,6 +28,10 @@ pub(super) fn run(folder: &Path, shared: &Shared) -> Result<(), Failure> {
         let parent = path.parent().unwrap_or(folder);
         fs::create_dir_all(parent).map_err(|error| failed(parent, error))?;
         fs::write(&path, content).map_err(|error| failed(&path, error))?;
+    }
+    if shared.json {
+        let names = files.iter().map(|(name, _)| &**name).collect();
+        return output::print_json(&Done::new("start", None, folder, names, NoMore {}));
     }
     if !shared.quiet {
         output::complain(&format!(

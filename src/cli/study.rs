@@ -2,6 +2,9 @@
 
 use super::arguments::Shared;
 use super::assemble::assemble;
+use super::browser;
+use super::done::{Done, names_of};
+use super::ending::Ending;
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::own_years::own_years;
@@ -16,29 +19,30 @@ use crate::figures::{FIGURES, Setting, of_sites};
 use crate::findings::{BandFindings, Findings};
 use crate::report::numbers::counted;
 use crate::report::{
-    Answer, Reader, Record, ReportFile, SCHEMA_VERSION, Study, answer_in_words, briefing_html,
-    data_package_json, manifest_json, publish, summary_json, tables, workbook_xlsx,
+    Answer, Reader, Record, ReportFile, Study, answer_in_words, briefing_html, data_package_json,
+    manifest_json, publish, second_looks, summary_json, tables, workbook_xlsx,
 };
 use crate::season::Measures;
 use serde::Serialize;
 use std::path::{Path, PathBuf};
+use std::time::Instant;
 
 #[cfg(test)]
 mod said;
 
+/// The file of the results that is to be looked at first.
+const PAGE: &str = "briefing.html";
+
+/// What the document says beside the files.
 #[derive(Serialize)]
-struct Done<'a> {
-    schema_version: u32,
-    program: &'static str,
-    status: &'static str,
-    title: &'a str,
-    into: String,
-    files: Vec<&'a str>,
+struct Answered<'a> {
     answer: &'a Answer,
 }
 
-/// Runs the command.
-pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
+/// Runs the command; with the briefing opened at its end, if that is asked for.
+pub(super) fn run(path: &Path, open: bool, shared: &Shared) -> Result<(), Failure> {
+    let began = Instant::now();
+    browser::may_open(open, shared)?;
     let progress = Progress::new(shared);
     let ready = assemble(path, shared)?;
     mind_interrupts();
@@ -72,25 +76,23 @@ pub(super) fn run(path: &Path, shared: &Shared) -> Result<(), Failure> {
     }
     may_be_replaced(&target, "study", shared)?;
     publish(&files, &target).map_err(|error| unpublished(&error))?;
-    let into = target.display().to_string();
     if shared.json {
-        let files = files.iter().map(|(name, _)| name.as_str()).collect();
-        return output::print_json(&Done {
-            schema_version: SCHEMA_VERSION,
-            program: "thawline",
-            status: "done",
-            title: study.title,
-            into,
-            files,
-            answer: &answer,
-        });
+        let more = Answered { answer: &answer };
+        return output::print_json(&Done::new("study", Some(study.title), &target, names_of(&files), more));
+    }
+    if open {
+        browser::open(&target.join(PAGE));
     }
     if !shared.quiet {
-        output::complain(&format!(
-            "{}\nbriefing: {}\n",
-            answer.verdict,
-            target.join("briefing.html").display()
-        ));
+        let ending = Ending {
+            answer: &answer.verdict,
+            folder: &target,
+            first: PAGE,
+            second_looks: second_looks(&study),
+            said_where: "said at the top of the briefing",
+            began,
+        };
+        ending.say();
     }
     Ok(())
 }

@@ -3,6 +3,7 @@
 
 use super::arguments::Shared;
 use super::assemble::assemble;
+use super::done::{Done, NoMore, names_of};
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use crate::perturb::{Generator, MeanChange};
@@ -13,11 +14,7 @@ use std::path::Path;
 
 /// Runs the command: to standard output, or into `weather.csv` of the folder that `--into` names.
 pub(super) fn run(path: &Path, realization: Option<u32>, shared: &Shared) -> Result<(), Failure> {
-    if shared.json {
-        return Err(Failure::CommandLine(
-            "--json is not for weather, whose output is a CSV table".to_owned(),
-        ));
-    }
+    output::may_be_document("weather", shared)?;
     let ready = assemble(path, shared)?;
     let realizations = &ready.scenario.realizations;
     if let Some(number) = realization.filter(|number| *number > realizations.count) {
@@ -52,6 +49,10 @@ pub(super) fn run(path: &Path, realization: Option<u32>, shared: &Shared) -> Res
         may_be_replaced(into, "weather", shared)?;
         let files = [("weather.csv".to_owned(), table), ("run.json".to_owned(), manifest)];
         publish(&files, into).map_err(|error| unpublished(&error))?;
+        if shared.json {
+            let title = Some(ready.scenario.title.as_str());
+            return output::print_json(&Done::new("weather", title, into, names_of(&files), NoMore {}));
+        }
         if !shared.quiet {
             output::complain(&format!("weather table: {}\n", into.join("weather.csv").display()));
         }

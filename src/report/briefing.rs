@@ -173,6 +173,14 @@ fn elevations(study: &Study<'_>, answer: &Answer, figures: &Figures<'_>) -> Mark
     html! { (elevation::section(study, figures)) (places::elevations(answer)) (perennial::paragraph(study)) }
 }
 
+/// How many things the top of the page says are worth a second look.
+pub fn second_looks(study: &Study<'_>) -> usize {
+    let sheet = study.findings.generator.as_ref();
+    let mismatch = sheet.and_then(|sheet| snow_mismatch(sheet, study.reader));
+    let few = few_realizations(study.findings.realizations);
+    study.unlikely.len() + usize::from(mismatch.is_some()) + usize::from(few.is_some())
+}
+
 /// What a page of few realizations opens with; nothing where there are enough.
 fn few_realizations(realizations: usize) -> Option<String> {
     if realizations >= LEAST_REALIZATIONS_FOR_A_RANGE {

@@ -27,7 +27,7 @@ mod weather;
 mod workbook;
 
 pub use answer::{Answer, answer_in_words, period_name};
-pub use briefing::briefing_html;
+pub use briefing::{briefing_html, second_looks};
 pub use checked::Checked;
 pub use daily::{DailyError, daily_csv};
 pub use data_package::data_package_json;

@@ -1,22 +1,30 @@
 //! The program as a user runs it: whole commands, their output, their files and their exit status.
 
 pub mod basin;
+mod browser;
 mod by_elevation;
 mod by_year;
 mod closed_form;
+mod colour;
+mod completions;
 mod corpus;
 mod data_faults;
+mod documents;
 mod drawn_days;
 mod drawn_weather;
+mod ending;
+mod examples;
 mod fit;
 mod generator_sheet;
 mod gradients;
 mod ground;
+mod help;
 mod humidity;
 mod identities;
 mod intensity;
 mod interrupt;
 mod keys;
+mod manual;
 mod methods;
 mod normal;
 mod observed;

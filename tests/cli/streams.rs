@@ -32,21 +32,6 @@ fn exit_statuses_of_the_command_line() {
     }
 }
 
-/// Help fits a terminal of 80 columns and shows commands that work.
-#[test]
-fn help_fits_and_its_examples_name_real_commands() {
-    let help = Basin::new().run("--help").stdout;
-    let longest = help.lines().map(|line| line.chars().count()).max();
-    assert!(longest <= Some(80), "{longest:?}");
-    let examples: Vec<&str> =
-        help.lines().filter_map(|line| line.trim().strip_prefix("$ thawline ")).collect();
-    assert!(examples.len() >= 3, "{help}");
-    for example in examples {
-        let command = example.split_whitespace().next().unwrap();
-        assert_eq!(Basin::new().run(&format!("{command} --help")).status, 0, "{command}");
-    }
-}
-
 /// A scenario on standard input is read relative to the current folder, and a study of it needs --into.
 #[test]
 fn a_scenario_from_standard_input() {
@@ -107,15 +92,46 @@ fn closed_pipe_and_full_disk() {
     let shell = format!("{} daily scenario.toml --quiet | head -1", env!("CARGO_BIN_EXE_thawline"));
     let piped = Command::new("sh").arg("-c").arg(shell).current_dir(basin.path()).output().unwrap();
     assert!(piped.status.success() && piped.stderr.is_empty(), "{piped:?}");
-    for words in ["check", "daily"] {
+    let of_scenario =
+        ["check scenario.toml", "daily scenario.toml", "weather scenario.toml", "study scenario.toml --json"];
+    let of_nothing =
+        ["--help", "help study", "fit -h", "--version", "manual", "completions bash", "study --json"];
+    for words in of_scenario.into_iter().chain(of_nothing) {
         let full = std::fs::File::options().write(true).open("/dev/full").unwrap();
-        let status = Command::new(env!("CARGO_BIN_EXE_thawline"))
-            .args([words, "scenario.toml"])
+        let ended = Command::new(env!("CARGO_BIN_EXE_thawline"))
+            .args(words.split_whitespace())
             .current_dir(basin.path())
             .stdout(full)
-            .stderr(Stdio::null())
-            .status()
+            .output()
             .unwrap();
-        assert_eq!(status.code(), Some(4), "{words}");
+        assert_eq!(ended.status.code(), Some(4), "{words}");
+        let said = String::from_utf8(ended.stderr).unwrap();
+        assert!(
+            said.contains("cannot write to standard output") || words.contains("--json"),
+            "{words}: {said}"
+        );
+    }
+}
+
+/// Nothing ever asks: every command does its work, and says its help, with no standard input at all.
+#[test]
+#[cfg(unix)]
+fn without_standard_input() {
+    let basin = Basin::new();
+    for words in [
+        "study scenario.toml --quiet",
+        "study scenario.toml --quiet",
+        "daily scenario.toml",
+        "weather scenario.toml",
+        "check scenario.toml",
+        "start demo",
+        "start demo",
+        "completions zsh",
+        "manual",
+        "--help",
+    ] {
+        let line = format!("exec '{}' {words} <&-", env!("CARGO_BIN_EXE_thawline"));
+        let ended = Command::new("sh").args(["-c", &line]).current_dir(basin.path()).output().unwrap();
+        assert!(ended.status.success(), "{words}: {ended:?}");
     }
 }
