@@ -59,7 +59,7 @@ use notes::Notes;
 use section::Section;
 
 /// A title is one line.
-const LONGEST_TITLE: usize = 200;
+const LONGEST_TITLE: usize = 1000;
 
 /// Everything a scenario says, checked.
 #[derive(Debug, Clone)]

@@ -25,7 +25,7 @@ pub struct ObservedTyped {
 }
 
 /// A site's name stands in titles and tables.
-const LONGEST_NAME: usize = 80;
+const LONGEST_NAME: usize = 300;
 
 /// Reads every site; one with a fault is none.
 pub(super) fn read(sections: Vec<Section<'_>>) -> Vec<Option<ObservedTyped>> {

@@ -1,6 +1,7 @@
 //! The page as it is laid out: nothing fetched, nothing wider than a telephone, every letter dark enough.
 
 use super::{page_of, probed};
+use crate::cli::hostile_names;
 use serde_json::Value;
 
 /// Opens every part, then measures.
@@ -110,4 +111,23 @@ fn the_cold_basin_is_sound() {
 #[test]
 fn the_basin_in_us_units_is_sound() {
     is_sound("tamsin-river");
+}
+
+/// Names that would be markup: the browser shows them as they were typed, and neither runs nor loads anything.
+#[test]
+fn a_page_of_hostile_names_is_sound() {
+    let Some((browser, basin)) = page_of("alder-fork", |demo| hostile_names::scenario(&demo)) else { return };
+    let shown = browser.dump(&basin.path().join("out/briefing.html"), 1000);
+    assert!(shown.console.is_empty(), "{:?}", shown.console);
+    let probe = "return { title: document.querySelector('h1').textContent, scripts: document.scripts.length, \
+                 rows: [...document.querySelectorAll('th')].map((th) => th.textContent), \
+                 wide: document.documentElement.scrollWidth - innerWidth };";
+    let found = probed(&browser, &basin, (probe, ""), 360);
+    let rows: Vec<&str> = found["rows"].as_array().unwrap().iter().filter_map(Value::as_str).collect();
+    for name in hostile_names::NAMES {
+        assert!(found["title"].as_str().unwrap().contains(name), "{name}");
+        assert!(rows.contains(&name), "{name}");
+    }
+    assert_eq!(found["scripts"], 4, "its own two, the data of one, and this probe");
+    assert!(found["wide"].as_f64().unwrap() <= 0.0, "{}", found["wide"]);
 }

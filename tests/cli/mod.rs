@@ -19,6 +19,7 @@ mod generator_sheet;
 mod gradients;
 mod ground;
 mod help;
+pub mod hostile_names;
 mod humidity;
 mod identities;
 mod intensity;

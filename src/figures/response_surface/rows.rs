@@ -12,6 +12,8 @@ const ROW_PX: f64 = 20.0;
 const MARK_PX: f64 = 34.0;
 /// More cases than this are not named below the drawing.
 const MOST_CASES: usize = 12;
+/// Letters of a name.
+const LONGEST_NAME: usize = 40;
 const NUMBER_RADIUS_PX: f64 = 9.0;
 /// A case's number on its mark.
 const NUMBER: Lettering = Lettering { class: "number", size_px: 12.0, is_bold: true, ink: PAPER };
@@ -66,6 +68,14 @@ pub(super) fn marks(surface: &ResponseSurface) -> Vec<NamedMark> {
     surface.named.iter().enumerate().map(of).collect()
 }
 
+/// A name with room left for what is said of it; the tables have it in full.
+fn shortened(name: &str) -> String {
+    if name.chars().count() <= LONGEST_NAME {
+        return name.to_owned();
+    }
+    name.chars().take(LONGEST_NAME - 3).chain("...".chars()).collect()
+}
+
 impl Rows {
     pub fn of(surface: &ResponseSurface, setting: &Setting<'_>) -> Self {
         let mut rows = Vec::new();
@@ -79,7 +89,7 @@ impl Rows {
                 let found = found.map_or(String::new(), |found| format!(": {}", signed_percent(found.value)));
                 let text = format!(
                     "{} ({}, {} precipitation){found}",
-                    named.name,
+                    shortened(&named.name),
                     level(setting.units, change.warming_c),
                     signed_percent(change.precipitation_change_pct)
                 );
@@ -100,7 +110,7 @@ impl Rows {
             } else {
                 "holds above the line, fails below it"
             };
-            (Mark::Line(stroke), format!("{}: {says}{alone}", line.name))
+            (Mark::Line(stroke), format!("{}: {says}{alone}", shortened(&line.name)))
         }));
         rows.push((
             Mark::Line(Stroke::solid(INK, 2.4)),

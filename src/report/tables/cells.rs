@@ -4,6 +4,7 @@ use crate::findings::{Chance, Crossing, CrossingRange, Distribution, Estimate, R
 use crate::season::{Kind, Measure, Outcome};
 use crate::units::UnitSystem;
 use csv::Writer;
+use std::borrow::Cow;
 
 /// The name of a measure with the unit in which it is told: `swe_04_01_in`.
 pub(super) fn name(measure: &Measure, units: UnitSystem) -> String {
@@ -112,7 +113,19 @@ pub(super) fn crossing_range(range: Option<CrossingRange>, units: UnitSystem) ->
 
 /// Writing to memory cannot fail.
 pub(in super::super) fn write(writer: &mut Writer<Vec<u8>>, row: &[String]) {
-    let _ = writer.write_record(row);
+    let _ = writer.write_record(row.iter().map(|cell| no_formula(cell).into_owned()));
+}
+
+/// Cells that a spreadsheet would take for the start of a formula begin so (OWASP ASVS 5.0, 1.2.10).
+const STARTS_OF_FORMULAS: [char; 7] = ['=', '+', '-', '@', '\t', '\r', '\0'];
+
+/// A name that a spreadsheet would run stands behind an apostrophe; numbers stay as they are.
+fn no_formula(cell: &str) -> Cow<'_, str> {
+    if cell.starts_with(STARTS_OF_FORMULAS) && cell.parse::<f64>().is_err() {
+        Cow::Owned(format!("'{cell}"))
+    } else {
+        Cow::Borrowed(cell)
+    }
 }
 
 pub(in super::super) fn finish(writer: Writer<Vec<u8>>) -> Vec<u8> {

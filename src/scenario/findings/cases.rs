@@ -7,7 +7,7 @@ use crate::findings::{Change, ChangeOrigin, NamedChange};
 use std::ops::RangeInclusive;
 
 /// A name stands beside a mark.
-pub(super) const LONGEST_NAME: usize = 40;
+pub(super) const LONGEST_NAME: usize = 300;
 /// What can be meant, degC.
 pub(super) const WARMING_C: RangeInclusive<f64> = -10.0..=15.0;
 /// What can be meant, percent.

@@ -425,7 +425,7 @@ error: title: a title with line breaks or control signs, or a very long one
  --> scenario.toml:1:9
   |
 1 | title = "Test\u0007 fork"
-  |         ^^^^^^^^^^^^^^^^^ expected one line of at most 200 characters
+  |         ^^^^^^^^^^^^^^^^^ expected one line of at most 1000 characters
   |
   = help: shorten it
 
