@@ -1,6 +1,7 @@
 //! The command line as it is typed.
 
 use super::daily::WaterYears;
+use super::pictures::Pictures;
 use clap::{Args, Parser, Subcommand, ValueEnum};
 use std::io::IsTerminal;
 use std::path::PathBuf;
@@ -35,6 +36,8 @@ pub(super) enum Command {
     Study {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
+        #[command(flatten)]
+        pictures: Pictures,
     },
     /// Run the record as observed; daily states and fluxes of every band as CSV
     Daily {
@@ -46,11 +49,15 @@ pub(super) enum Command {
         /// Of which place: basin, a band by its number from the lowest, 1, or a site with observed snow by its name
         #[arg(long, value_name = "PLACE", requires = "draw_years")]
         draw_band: Option<String>,
+        #[command(flatten)]
+        pictures: Pictures,
     },
     /// Search for parameters that bring the model nearest to observed snow; judge them on winters not seen
     Fit {
         /// The scenario, a TOML file; `-` reads it from standard input
         scenario: PathBuf,
+        #[command(flatten)]
+        pictures: Pictures,
     },
     /// Write station weather, day by day, as CSV: the record as realizations are made from it, or a realization
     Weather {

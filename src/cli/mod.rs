@@ -15,6 +15,7 @@ mod level_groups;
 mod output;
 mod own_years;
 mod parameter_sets;
+mod pictures;
 mod places;
 mod pool;
 mod progress;
@@ -44,12 +45,12 @@ pub fn run() -> u8 {
     };
     let shared = arguments.shared;
     let result = match arguments.command {
-        Command::Study { scenario } => study::run(&scenario, &shared),
-        Command::Daily { scenario, draw_years, draw_band } => {
+        Command::Study { scenario, pictures } => study::run(&scenario, pictures, &shared),
+        Command::Daily { scenario, draw_years, draw_band, pictures } => {
             let asked = draw_years.map(|years| daily::Asked { years, place: draw_band });
-            daily::run(&scenario, asked.as_ref(), &shared)
+            daily::run(&scenario, asked.as_ref(), pictures, &shared)
         }
-        Command::Fit { scenario } => fit::run(&scenario, &shared),
+        Command::Fit { scenario, pictures } => fit::run(&scenario, pictures, &shared),
         Command::Weather { scenario, realization } => weather::run(&scenario, realization, &shared),
         Command::Check { scenario, weather } => check::run(&scenario, weather, &shared),
         Command::Start { folder } => start::run(&folder, &shared),
