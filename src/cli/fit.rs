@@ -12,7 +12,9 @@ use super::progress::{Progress, is_interrupted, mind_interrupts};
 use super::ready::Ready;
 use crate::fault::Fault;
 use crate::fit::{FitEnd, Held, LEAST_WINTERS, LeftOut, Plan, Site, Value, fit, left_out, without};
-use crate::report::{FitReport, SCHEMA_VERSION, fit_files, fit_in_words, fit_manifest_json, left_out_lines, publish};
+use crate::report::{
+    FitReport, SCHEMA_VERSION, fit_files, fit_in_words, fit_manifest_json, left_out_lines, publish,
+};
 use serde::Serialize;
 use std::collections::BTreeSet;
 use std::path::{Path, PathBuf};

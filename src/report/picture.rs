@@ -17,8 +17,9 @@ static REGULAR: &[u8] = include_bytes!("fonts/LiberationSans-Regular.ttf");
 static BOLD: &[u8] = include_bytes!("fonts/LiberationSans-Bold.ttf");
 /// A weight from which on letters are bold, halfway between 400 and 700, rounded up.
 const BOLD_FROM: u16 = 600;
-/// Rows drawn at a time: a large picture would not fit into memory once for every thread.
-const ROWS_AT_A_TIME: u32 = 256;
+/// Pixels drawn at a time, 64 MiB of them: the largest pictures, one on each thread, would not fit into memory, and are
+/// drawn in pieces.
+const PIXELS_AT_A_TIME: u32 = 1 << 24;
 
 /// A picture.
 #[derive(Debug, Clone, PartialEq, Eq)]
@@ -59,12 +60,16 @@ pub enum PictureError {
 /// # Errors
 /// What is no SVG, or a size that cannot be held.
 pub fn picture_of(svg: &[u8], width_px: u32) -> Result<Picture, PictureError> {
+    drawn(svg, width_px, PIXELS_AT_A_TIME)
+}
+
+fn drawn(svg: &[u8], width_px: u32, pixels_at_a_time: u32) -> Result<Picture, PictureError> {
     let tree = Tree::from_data(svg, &options()?)?;
     let size = tree.size();
     let scale = width_px as f32 / size.width();
     let height_px = (size.height() * scale).round().max(1.0) as u32;
-    let rows = ROWS_AT_A_TIME.min(height_px);
-    let mut strip = Pixmap::new(width_px, rows).ok_or(PictureError::Size { width_px, height_px })?;
+    let rows = (pixels_at_a_time / width_px.max(1)).clamp(1, height_px);
+    let mut piece = Pixmap::new(width_px, rows).ok_or(PictureError::Size { width_px, height_px })?;
 
     let mut png = Vec::new();
     let mut encoder = Encoder::new(&mut png, width_px, height_px);
@@ -72,13 +77,13 @@ pub fn picture_of(svg: &[u8], width_px: u32) -> Result<Picture, PictureError> {
     encoder.set_depth(BitDepth::Eight);
     let mut header = encoder.write_header()?;
     let mut pixels = header.stream_writer()?;
-    for top in (0..height_px).step_by(ROWS_AT_A_TIME as usize) {
-        strip.fill(Color::WHITE);
+    for top in (0..height_px).step_by(rows as usize) {
+        piece.fill(Color::WHITE);
         let place = Transform::from_row(scale, 0.0, 0.0, scale, 0.0, -(top as f32));
-        resvg::render(&tree, place, &mut strip.as_mut());
+        resvg::render(&tree, place, &mut piece.as_mut());
         let count = width_px as usize * rows.min(height_px - top) as usize;
         // On white every pixel is opaque, so that its colour is written as it is held.
-        let colours = strip.pixels()[..count].iter();
+        let colours = piece.pixels()[..count].iter();
         let bytes: Vec<u8> = colours.flat_map(|pixel| [pixel.red(), pixel.green(), pixel.blue()]).collect();
         pixels.write_all(&bytes)?;
     }
@@ -98,9 +103,7 @@ fn options() -> Result<Options<'static>, PictureError> {
     };
     let (regular, bold) = (load(REGULAR)?, load(BOLD)?);
     let font_resolver = FontResolver {
-        select_font: Box::new(move |font, _| {
-            Some(if font.weight() >= BOLD_FROM { bold } else { regular })
-        }),
+        select_font: Box::new(move |font, _| Some(if font.weight() >= BOLD_FROM { bold } else { regular })),
         select_fallback: Box::new(|_, _, _| None),
     };
     Ok(Options { fontdb: Arc::new(fonts), font_resolver, ..Options::default() })
