@@ -1,6 +1,7 @@
 //! The command line as it is typed.
 
 use super::daily::WaterYears;
+use super::pictures::Pictures;
 use clap::{Args, Parser, Subcommand, ValueEnum};
 use clap_complete::Shell;
 use std::ffi::OsStr;
@@ -26,6 +27,8 @@ pub(super) enum Command {
         /// Open the briefing in your browser once it is written; not with --json
         #[arg(long)]
         open: bool,
+        #[command(flatten)]
+        pictures: Pictures,
     },
     /// Run the record as observed; daily states and fluxes of every band as CSV
     Daily {
@@ -37,6 +40,8 @@ pub(super) enum Command {
         /// Of which place: basin, a band by its number from the lowest, 1, or a site with observed snow by its name
         #[arg(long, value_name = "PLACE", requires = "draw_years")]
         draw_band: Option<String>,
+        #[command(flatten)]
+        pictures: Pictures,
     },
     /// Search for parameters nearest to observed snow; judge them on winters not seen
     Fit {
@@ -45,6 +50,8 @@ pub(super) enum Command {
         /// Open the page in your browser once it is written; not with --json
         #[arg(long)]
         open: bool,
+        #[command(flatten)]
+        pictures: Pictures,
     },
     /// Write station weather, day by day, as CSV: the record, or a realization of it
     Weather {

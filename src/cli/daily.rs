@@ -9,6 +9,7 @@ use super::assemble::assemble;
 use super::done::{Done, NoMore, names_of};
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
+use super::pictures::Pictures;
 use super::progress::{is_interrupted, mind_interrupts};
 use super::ready::Ready;
 use crate::figures::{Setting, of_days, of_sites};
@@ -24,14 +25,31 @@ use std::io::{self, BufWriter, Write};
 use std::path::Path;
 
 /// Runs the command: to standard output, or into `daily.csv` of the folder that `--into` names.
-pub(super) fn run(path: &Path, asked: Option<&Asked>, shared: &Shared) -> Result<(), Failure> {
+pub(super) fn run(
+    path: &Path,
+    asked: Option<&Asked>,
+    pictures: Pictures,
+    shared: &Shared,
+) -> Result<(), Failure> {
     output::may_be_document("daily", shared)?;
-    if asked.is_some() && shared.into.is_none() {
-        return Err(Failure::CommandLine(
-            "--draw-years leaves a figure, and a figure needs a folder: add --into DIR".to_owned(),
-        ));
+    if shared.into.is_none() {
+        if asked.is_some() {
+            return Err(Failure::CommandLine(
+                "--draw-years leaves a figure, and a figure needs a folder: add --into DIR".to_owned(),
+            ));
+        }
+        if pictures.width_px.is_some() {
+            return Err(Failure::CommandLine(
+                "--png leaves pictures, and a picture needs a folder: add --into DIR".to_owned(),
+            ));
+        }
     }
     let ready = assemble(path, shared)?;
+    if pictures.width_px.is_some() && asked.is_none() && ready.sites().is_empty() {
+        return Err(Failure::CommandLine(
+            "--png: nothing is drawn here without observed snow; add --draw-years YEARS".to_owned(),
+        ));
+    }
     let picture = asked.map(|asked| Picture::of(asked, &ready)).transpose()?;
     let lanes = ready.lanes(&[MonthlyChange::NONE]);
     let comparisons = ready.comparisons().map_err(|open| Failure::Ours(open.to_string()))?;
@@ -57,8 +75,9 @@ pub(super) fn run(path: &Path, asked: Option<&Asked>, shared: &Shared) -> Result
         let figures_at: Vec<String> =
             figures.iter().map(|(name, _)| into.join(name).display().to_string()).collect();
         files.extend(figures);
+        let mut files = pictures.beside(files, shared)?;
         let names: Vec<&str> = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
-        let command = format!("daily{}", picture.as_ref().map_or("", Picture::flags));
+        let command = format!("daily{}{}", picture.as_ref().map_or("", Picture::flags), pictures.flags());
         let manifest = daily_manifest_json(&ready.origin(&command, path, shared), &names);
         let manifest = manifest.map_err(|error| Failure::Ours(error.to_string()))?;
         files.push(("run.json".to_owned(), manifest));

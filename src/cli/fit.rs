@@ -9,13 +9,14 @@ use super::done::{Done, names_of};
 use super::ending::Ending;
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
+use super::pictures::Pictures;
 use super::pool::in_pool;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
 use super::ready::Ready;
 use crate::fault::Fault;
 use crate::fit::{FitEnd, Held, LEAST_WINTERS, LeftOut, Plan, Site, Value, fit, left_out, without};
 use crate::report::numbers::counted;
-use crate::report::{FitReport, fit_files, fit_in_words, left_out_lines, publish};
+use crate::report::{FitReport, fit_files, fit_in_words, fit_manifest_json, left_out_lines, publish};
 use serde::Serialize;
 use std::collections::BTreeSet;
 use std::path::{Path, PathBuf};
@@ -33,7 +34,7 @@ struct Found<'a> {
 }
 
 /// Runs the command; with the page opened at its end, if that is asked for.
-pub(super) fn run(path: &Path, open: bool, shared: &Shared) -> Result<(), Failure> {
+pub(super) fn run(path: &Path, open: bool, pictures: Pictures, shared: &Shared) -> Result<(), Failure> {
     let began = Instant::now();
     browser::may_open(open, shared)?;
     let progress = Progress::new(shared);
@@ -109,9 +110,13 @@ pub(super) fn run(path: &Path, open: bool, shared: &Shared) -> Result<(), Failur
         left_out: &left_out,
         cool_temperature: ready.baseline.as_ref().and_then(|baseline| baseline.cool_temperature.as_ref()),
         result: &result,
-        origin: ready.origin("fit", path, shared),
+        origin: ready.origin(&format!("fit{}", pictures.flags()), path, shared),
     };
-    let files = fit_files(&report).map_err(|error| Failure::Ours(error.to_string()))?;
+    let ours = |error: serde_json::Error| Failure::Ours(error.to_string());
+    let mut files = pictures.beside(fit_files(&report).map_err(ours)?, shared)?;
+    let names: Vec<&str> = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
+    let manifest = fit_manifest_json(&report.origin, &names).map_err(ours)?;
+    files.push(("run.json".to_owned(), manifest));
     if is_interrupted() {
         return Err(Failure::Interrupted);
     }

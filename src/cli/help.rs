@@ -28,6 +28,7 @@ pub(super) const CAUTION: &str = "A planning aid: not for flood forecasting or t
 /// The command line with its help.
 pub(super) fn command() -> clap::Command {
     Arguments::command()
+        .subcommand_value_name("COMMAND")
         .help_template(TEMPLATE)
         .before_help(in_words(&OF_THE_PROGRAM))
         .after_help(last_of_help())

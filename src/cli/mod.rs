@@ -22,6 +22,7 @@ mod manual;
 mod output;
 mod own_years;
 mod parameter_sets;
+mod pictures;
 mod places;
 mod pool;
 mod progress;
@@ -51,12 +52,12 @@ pub fn run() -> u8 {
     };
     let shared = arguments.shared;
     let result = match arguments.command {
-        Command::Study { scenario, open } => study::run(&scenario, open, &shared),
-        Command::Daily { scenario, draw_years, draw_band } => {
+        Command::Study { scenario, open, pictures } => study::run(&scenario, open, pictures, &shared),
+        Command::Daily { scenario, draw_years, draw_band, pictures } => {
             let asked = draw_years.map(|years| daily::Asked { years, place: draw_band });
-            daily::run(&scenario, asked.as_ref(), &shared)
+            daily::run(&scenario, asked.as_ref(), pictures, &shared)
         }
-        Command::Fit { scenario, open } => fit::run(&scenario, open, &shared),
+        Command::Fit { scenario, open, pictures } => fit::run(&scenario, open, pictures, &shared),
         Command::Weather { scenario, realization } => weather::run(&scenario, realization, &shared),
         Command::Check { scenario, weather } => check::run(&scenario, weather, &shared),
         Command::Start { folder } => start::run(&folder, &shared),

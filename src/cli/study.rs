@@ -8,6 +8,7 @@ use super::ending::Ending;
 use super::failure::{Failure, may_be_replaced, unpublished};
 use super::output;
 use super::own_years::own_years;
+use super::pictures::Pictures;
 use super::places;
 use super::pool::in_pool;
 use super::progress::{Progress, is_interrupted, mind_interrupts};
@@ -19,7 +20,7 @@ use crate::figures::{FIGURES, Setting, of_sites};
 use crate::findings::{BandFindings, Findings};
 use crate::report::numbers::counted;
 use crate::report::{
-    Answer, Reader, Record, ReportFile, Study, answer_in_words, briefing_html, data_package_json,
+    Answer, Origin, Reader, Record, ReportFile, Study, answer_in_words, briefing_html, data_package_json,
     manifest_json, publish, second_looks, summary_json, tables, workbook_xlsx,
 };
 use crate::season::Measures;
@@ -40,7 +41,7 @@ struct Answered<'a> {
 }
 
 /// Runs the command; with the briefing opened at its end, if that is asked for.
-pub(super) fn run(path: &Path, open: bool, shared: &Shared) -> Result<(), Failure> {
+pub(super) fn run(path: &Path, open: bool, pictures: Pictures, shared: &Shared) -> Result<(), Failure> {
     let began = Instant::now();
     browser::may_open(open, shared)?;
     let progress = Progress::new(shared);
@@ -68,9 +69,11 @@ pub(super) fn run(path: &Path, open: bool, shared: &Shared) -> Result<(), Failur
     let findings = places::with_record(findings, &ready, &years, measures.list());
 
     progress.stage("writing figures, tables and briefing");
-    let study = describe(&ready, &measures, years, &findings, path, shared);
+    let command = format!("study{}", pictures.flags());
+    let origin = ready.origin(&command, path, shared);
+    let study = describe(&ready, &measures, years, &findings, origin);
     let answer = answer_in_words(&findings, study.warming, study.reader);
-    let files = write_files(&study, &answer)?;
+    let files = write_files(&study, &answer, |files| pictures.beside(files, shared))?;
     if is_interrupted() {
         return Err(Failure::Interrupted);
     }
@@ -102,8 +105,7 @@ fn describe<'a>(
     measures: &'a Measures,
     years: Vec<RecordYear>,
     findings: &'a Findings,
-    path: &Path,
-    shared: &Shared,
+    origin: Origin,
 ) -> Study<'a> {
     let scenario = &ready.scenario;
     Study {
@@ -134,7 +136,7 @@ fn describe<'a>(
         findings,
         defaults: &ready.defaults,
         unlikely: &ready.unlikely,
-        origin: ready.origin("study", path, shared),
+        origin,
     }
 }
 
@@ -147,7 +149,12 @@ fn reference_swe_mm(findings: &Findings) -> Vec<f64> {
     findings.bands.iter().map(|band| of_band(band).unwrap_or(0.0)).collect()
 }
 
-fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Failure> {
+/// Every file, `run.json` the last; `with_pictures` adds what it makes of the figures.
+fn write_files(
+    study: &Study<'_>,
+    answer: &Answer,
+    with_pictures: impl FnOnce(Vec<ReportFile>) -> Result<Vec<ReportFile>, Failure>,
+) -> Result<Vec<ReportFile>, Failure> {
     let ours = |error: serde_json::Error| Failure::Ours(error.to_string());
     let Reader { units, starts: water_year_starts } = study.reader;
     let is_fitted = study.fitted.is_some();
@@ -164,6 +171,7 @@ fn write_files(study: &Study<'_>, answer: &Answer) -> Result<Vec<ReportFile>, Fa
     for (slug, svg) in &drawn_of_sites {
         files.push((format!("figures/{slug}.svg"), svg.text.clone().into_bytes()));
     }
+    let mut files = with_pictures(files)?;
     let tables = tables(study);
     let workbook = workbook_xlsx(study.title, &tables).map_err(|error| Failure::Ours(error.to_string()))?;
     let package = data_package_json(study.title, &tables).map_err(ours)?;

@@ -13,6 +13,7 @@ use super::theme::{
 use super::value_ticks::ValueTicks;
 use super::{Figure, Part, Setting, Svg, ensemble};
 use crate::findings::{Distribution, Findings, MeasureFindings};
+use crate::season::Outcome;
 use crate::units::UnitSystem;
 
 /// What every result is for and what not; on the slide, since a slide travels alone.
@@ -235,7 +236,7 @@ fn key(told: &Told<'_>, sheet: &Sheet, right: f64, below: f64) -> Drawn {
 }
 
 fn quantiles(of: &Distribution) -> [Option<f64>; 5] {
-    [of.q05, of.q25, of.q50, of.q75, of.q95].map(|outcome| outcome.value())
+    [of.q05, of.q25, of.q50, of.q75, of.q95].map(Outcome::value)
 }
 
 fn marking(told: &Told<'_>, at: usize) -> Marking {

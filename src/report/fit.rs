@@ -84,10 +84,10 @@ struct Manifest<'a> {
     command: &'a str,
     seed: u64,
     inputs: &'a [Input],
-    files: Vec<&'a str>,
+    files: &'a [&'a str],
 }
 
-/// Every file of a fit, `run.json` the last.
+/// Every file of a fit but `run.json`, which names them all.
 ///
 /// # Errors
 /// A number that JSON cannot hold: a fault of ours.
@@ -120,18 +120,23 @@ pub fn fit_files(report: &FitReport<'_>) -> serde_json::Result<Vec<ReportFile>> 
     files.push(("tables/fit-winters.csv".to_owned(), winters::winters(report, &not_seen)));
     files.extend(observed_tables(&report.result.fitted[0].compared, report.reader.units));
     files.extend(drawn.files());
-    let names = files.iter().map(|(name, _)| name.as_str()).chain(["run.json"]).collect();
-    let manifest = lines(&Manifest {
+    Ok(files)
+}
+
+/// `run.json` of a fit.
+///
+/// # Errors
+/// A text that JSON cannot hold: a fault of ours.
+pub fn fit_manifest_json(origin: &Origin, files: &[&str]) -> serde_json::Result<Vec<u8>> {
+    lines(&Manifest {
         schema_version: SCHEMA_VERSION,
         program: "thawline",
         version: env!("CARGO_PKG_VERSION"),
-        command: &report.origin.command,
-        seed: report.origin.seed,
-        inputs: &report.origin.inputs,
-        files: names,
-    })?;
-    files.push(("run.json".to_owned(), manifest));
-    Ok(files)
+        command: &origin.command,
+        seed: origin.seed,
+        inputs: &origin.inputs,
+        files,
+    })
 }
 
 /// The fit in a few lines: its parameters, and how it does on years that it has not seen.

@@ -41,11 +41,11 @@ fn what_was_fitted_is_handed_on_by_one_line() {
     let basin = demo();
     let plain = basin.read("mine.toml");
     basin.write("mine.toml", &(plain.clone() + SMALL));
-    let ended = basin.run("fit mine.toml --threads 2");
+    let ended = basin.run("fit mine.toml --threads 2 --png 500");
     assert_eq!(ended.status, 0, "{}", ended.stderr);
     assert!(ended.stderr.contains("fitted on the coldest half of the winters"), "{}", ended.stderr);
     assert!(ended.stderr.contains("sets of parameters tried in"), "{}", ended.stderr);
-    let again = basin.run("fit mine.toml --threads 1 --quiet --into again");
+    let again = basin.run("fit mine.toml --threads 1 --quiet --into again --png 500");
     assert_eq!((again.status, again.stderr.as_str()), (0, ""));
     for file in [
         "parameters.toml",
@@ -65,6 +65,15 @@ fn what_was_fitted_is_handed_on_by_one_line() {
             "{file}"
         );
     }
+
+    let figures = super::pictures::each_has_its_picture(&basin, "output/mine-fit", 500);
+    assert_eq!(figures.len(), 4, "{figures:?}");
+    for slug in figures {
+        let [first, second] = ["output/mine-fit", "again"]
+            .map(|folder| std::fs::read(basin.path().join(format!("{folder}/figures/{slug}.png"))).unwrap());
+        assert!(first == second, "{slug}");
+    }
+    assert_eq!(json(&basin, "output/mine-fit/run.json")["command"], "thawline fit --png 500 mine.toml");
 
     let page = basin.read("again/fit.html");
     assert!(page.contains("A planning aid. Not for flood forecasting"), "the page carries the cautions");

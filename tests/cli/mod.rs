@@ -31,6 +31,7 @@ mod normal;
 mod observed;
 mod packages;
 mod parameter_sets;
+mod pictures;
 mod places;
 mod results;
 mod rule_panel;

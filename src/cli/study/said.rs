@@ -59,9 +59,10 @@ impl Answered {
         change(&mut findings);
         said::take();
         let path = self.folder.path().join(DEMO);
-        let study = describe(&self.ready, &self.measures, years, &findings, &path, &self.shared);
+        let origin = self.ready.origin("study", &path, &self.shared);
+        let study = describe(&self.ready, &self.measures, years, &findings, origin);
         let answer = answer_in_words(&findings, study.warming, study.reader);
-        write_files(&study, &answer).unwrap()
+        write_files(&study, &answer, Ok).unwrap()
     }
 }
 
