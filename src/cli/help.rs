@@ -85,7 +85,7 @@ fn colour(typed: &[OsString]) -> Colour {
     let words = typed.iter().map(|word| word.to_string_lossy());
     let following = words.clone().skip(1).map(Some).chain([None]);
     let named = words.zip(following).find_map(|(word, next)| match word.strip_prefix("--color") {
-        Some("") => next.map(|next| next.into_owned()),
+        Some("") => next.map(std::borrow::Cow::into_owned),
         Some(rest) => rest.strip_prefix('=').map(str::to_owned),
         None => None,
     });
