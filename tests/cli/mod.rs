@@ -43,3 +43,4 @@ mod surface;
 mod tables;
 mod units;
 mod verdict;
+mod wording;
