@@ -1,7 +1,7 @@
 //! Standard streams and exit statuses.
 
 use super::basin::{Basin, SCENARIO, ended};
-use std::process::{Command, Stdio};
+use std::process::Command;
 
 #[test]
 fn exit_statuses_of_the_command_line() {
