@@ -140,14 +140,11 @@ impl Colour {
         match self {
             Self::Always => true,
             Self::Never => false,
-            Self::Auto => is_terminal && no_color.is_none_or(OsStr::is_empty) && !is_dumb(term),
+            Self::Auto => {
+                is_terminal && no_color.is_none_or(OsStr::is_empty) && term.is_none_or(|term| term != "dumb")
+            }
         }
     }
-}
-
-/// Whether a terminal says that it can do nothing but print lines.
-pub(super) fn is_dumb(term: Option<&OsStr>) -> bool {
-    term.is_some_and(|term| term == "dumb")
 }
 
 #[cfg(test)]

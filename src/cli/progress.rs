@@ -1,6 +1,6 @@
 //! Progress of a run: a bar on a terminal, plain lines elsewhere, nothing when quiet; and Ctrl-C.
 
-use super::arguments::{Shared, is_dumb};
+use super::arguments::Shared;
 use super::output::complain;
 use crate::ensemble::Watch;
 use indicatif::{ProgressBar, ProgressDrawTarget, ProgressState, ProgressStyle};
@@ -36,8 +36,7 @@ pub(super) struct Progress {
 
 impl Progress {
     pub fn new(shared: &Shared) -> Self {
-        let can_draw = std::io::stderr().is_terminal() && !is_dumb(std::env::var_os("TERM").as_deref());
-        let show = match (shared.quiet, can_draw) {
+        let show = match (shared.quiet, std::io::stderr().is_terminal()) {
             (true, _) => Show::Nothing,
             (false, true) => Show::Bar,
             (false, false) => Show::Lines,
