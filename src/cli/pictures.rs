@@ -67,7 +67,7 @@ fn lacking_in_words(letters: &BTreeSet<String>) -> String {
     }
     let letters: Vec<&str> = letters.iter().map(String::as_str).collect();
     format!(
-        "PNG pictures have a box in place of each of these letters, which their font lacks; SVG figures and page have them: {}\n",
+        "PNG pictures have a box in place of each of these letters, which their font lacks; the SVG figures have them: {}\n",
         letters.join(" ")
     )
 }

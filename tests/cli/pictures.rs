@@ -182,7 +182,7 @@ fn letters_that_pictures_lack_are_said() {
     let (greek, _) = said_of("Ρέμα Снежная", "");
     assert!(!greek.contains("box"), "{greek}");
     let (mixed, with_boxes) = said_of("雪山 Fork", "");
-    let said = "PNG pictures have a box in place of each of these letters, which their font lacks; SVG figures and page have them: 山 雪\n";
+    let said = "PNG pictures have a box in place of each of these letters, which their font lacks; the SVG figures have them: 山 雪\n";
     assert!(mixed.contains(said), "{mixed}");
     let (quiet, again) = said_of("雪山 Fork", "--quiet");
     assert_eq!(quiet, "");
