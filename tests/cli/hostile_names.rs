@@ -14,6 +14,9 @@ pub const NAMES: [&str; 7] = [
     "</script></title></style></svg>{{7*7}}${7*7}%n%s",
 ];
 
+/// The name of the demo's site.
+const SITE: &str = "\"Heron Meadow snow course\"";
+
 /// The demo with all of them as its title, and as the names of a case and of a criterion each.
 pub fn scenario(demo: &str) -> String {
     let quoted = |name: &str| serde_json::to_string(name).unwrap().replace('\u{202e}', "\\u202e");
@@ -22,6 +25,8 @@ pub fn scenario(demo: &str) -> String {
     let (before, rest) = demo.split_once("title = ").unwrap();
     let (_, rest) = rest.split_once('\n').unwrap();
     let mut text = format!("{before}title = {}\n{rest}\n", quoted(&title));
+    assert!(text.contains(SITE));
+    text = text.replace(SITE, &quoted(&title.chars().take(300).collect::<String>()));
     for (at, name) in NAMES.iter().chain([&long.trim()]).enumerate() {
         text.push_str(&format!(
             "[[findings.cases]]\nname = {0}\nwarming_c = {1}\nprecipitation_change_pct = {1}\n\

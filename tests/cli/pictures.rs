@@ -45,8 +45,9 @@ pub fn each_has_its_picture(basin: &Basin, folder: &str, width_px: u32) -> BTree
     let files: Vec<&str> = files.as_array().unwrap().iter().map(|file| file.as_str().unwrap()).collect();
     for slug in &figures {
         let svg = basin.read(&format!("{folder}/figures/{slug}.svg"));
-        let height = svg.split_once("height=\"").unwrap().1.split_once('"').unwrap().0;
-        let height_px = height.parse::<f64>().unwrap() / 760.0 * f64::from(width_px);
+        let [width, height] = ["width=\"", "height=\""]
+            .map(|name| svg.split_once(name).unwrap().1.split_once('"').unwrap().0.parse::<f64>().unwrap());
+        let height_px = height / width * f64::from(width_px);
         let png = fs::read(basin.path().join(format!("{folder}/figures/{slug}.png"))).unwrap();
         assert!(png.starts_with(b"\x89PNG\r\n\x1a\n"), "{slug}");
         let word = |at: usize| u32::from_be_bytes(png[at..at + 4].try_into().unwrap());

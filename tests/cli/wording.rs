@@ -30,7 +30,14 @@ const OTHERWISE: [(&str, &str); 22] = [
 ];
 
 /// Words of likelihood mean a probability (IPCC: likely is 66 % and more) and are never said of a share of realizations.
-const LIKELIHOOD: [&str; 6] = ["very likely", "virtually certain", "exceptionally unlikely", "as likely as not", "is likely", "unlikely that"];
+const LIKELIHOOD: [&str; 6] = [
+    "very likely",
+    "virtually certain",
+    "exceptionally unlikely",
+    "as likely as not",
+    "is likely",
+    "unlikely that",
+];
 
 /// The text between the tags of a page or a drawing, in lower case.
 fn text_of(markup: &str) -> String {
@@ -40,11 +47,21 @@ fn text_of(markup: &str) -> String {
         text.push_str(before);
         text.push(' ');
         let skipped = ["style", "script"].iter().find(|name| after.starts_with(**name));
-        let after = skipped.and_then(|name| after.split_once(&format!("</{name}"))).map_or(after, |(_, after)| after);
+        let after =
+            skipped.and_then(|name| after.split_once(&format!("</{name}"))).map_or(after, |(_, after)| after);
         rest = after.split_once('>').map_or("", |(_, after)| after);
     }
     text.push_str(rest);
     text.to_lowercase()
+}
+
+/// Whether these words stand in a text, and not as a part of longer ones.
+fn has_words(text: &str, words: &str) -> bool {
+    text.match_indices(words).any(|(at, _)| {
+        let before = text[..at].chars().next_back();
+        let after = text[at + words.len()..].chars().next();
+        ![before, after].into_iter().flatten().any(char::is_alphabetic)
+    })
 }
 
 #[test]
@@ -55,7 +72,10 @@ fn one_spelling_of_each_term() {
     let mut said = Vec::new();
     for name in ["alder-fork", "frostbell-creek", "tamsin-river"] {
         let scenario = basin.read(&format!("scenarios/{name}.toml")).replace("../demo-data", "demo-data");
-        basin.write("mine.toml", &scenario.replacen("[realizations]\n", "[realizations]\ncount = 24\nyears = 6\n", 1));
+        basin.write(
+            "mine.toml",
+            &scenario.replacen("[realizations]\n", "[realizations]\ncount = 24\nyears = 6\n", 1),
+        );
         let ended = basin.run(&format!("study mine.toml --into {name}"));
         assert_eq!(ended.status, 0, "{}", ended.stderr);
         said.push((format!("{name}, last lines"), ended.stderr.to_lowercase()));
@@ -66,19 +86,31 @@ fn one_spelling_of_each_term() {
         }
     }
     for command in ["", "study", "daily", "check", "fit", "weather", "start"] {
-        said.push((format!("help of {command}"), basin.run(&format!("{command} --help")).stdout.to_lowercase()));
+        said.push((
+            format!("help of {command}"),
+            basin.run(&format!("{command} --help")).stdout.to_lowercase(),
+        ));
     }
     let mut found = BTreeSet::new();
     for (place, text) in &said {
         assert!(text.len() > 100, "{place}: {text}");
         for (other, ours) in OTHERWISE {
-            if text.contains(other) {
+            if has_words(text, other) {
                 found.insert(format!("{place}: {other:?} for {ours:?}"));
             }
         }
-        found.extend(LIKELIHOOD.iter().filter(|word| text.contains(**word)).map(|word| format!("{place}: {word:?}")));
+        found.extend(
+            LIKELIHOOD.iter().filter(|word| has_words(text, word)).map(|word| format!("{place}: {word:?}")),
+        );
     }
     assert!(found.is_empty(), "{found:#?}");
+}
+
+/// By hand.
+#[test]
+fn words_are_whole() {
+    assert!(has_words("of melt out, and", "melt out") && has_words("runoff", "runoff"));
+    assert!(!has_words("the melt outweighs", "melt out") && !has_words("snowmelt out", "melt out"));
 }
 
 /// By hand: tags, styles and scripts are no text.
