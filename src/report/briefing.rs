@@ -20,6 +20,7 @@ mod sources;
 mod together;
 mod volumes;
 mod warm_years;
+mod words;
 mod yardsticks;
 mod years;
 
@@ -33,7 +34,8 @@ use crate::basin::Basin;
 use crate::figures::{Figure, Part, Svg};
 use crate::findings::LEAST_REALIZATIONS_FOR_A_RANGE;
 use maud::{Markup, html};
-use parts::{Group, part};
+use parts::{GLOSSARY, Group, part};
+use words::Words;
 
 /// So many cautions, those that matter most, stand right under the answer.
 const CAUTIONS_FIRST: usize = 3;
@@ -54,6 +56,8 @@ pub fn briefing_html(
     let figures = Figures(figures);
     let findings = study.findings;
     let cautions = cautions::cautions(study.reader, study.warming, &study.snow.options);
+    let terms = terms::terms(study.reader);
+    let mut words = Words::new(&terms);
     let content = html! {
         p.over {
             (counted(findings.realizations, "realization")) " of " (counted(findings.years, "water year")) " under "
@@ -78,15 +82,19 @@ pub fn briefing_html(
             p.notice { (counted(study.unlikely.len(), "thing")) " about the input " (if study.unlikely.len() == 1 { "is" } else { "are" })
                 " " a href=(format!("#{}", assumed::SECOND_LOOK)) { "worth a second look" } "." }
         }
-        (answer::section(study, answer))
+        @let answered = answer::section(study, answer);
+        (answered)
+        (words.first_used_in(&answered))
         div.first role="note" aria-label="Before a number is used" { ul { @for caution in cautions.iter().take(CAUTIONS_FIRST) { li { (caution) } } } }
         (figures.of(Part::Answer))
         @for (slide, _) in figures.0.iter().filter(|(of, _)| of.part == Part::Slide) {
             @let file = format!("figures/{}.svg", slide.slug);
             p { "The answer for a slide, 16 to 9: " a href=(file) { (file) } "." }
         }
-        (explorer::section(study))
-        (parts::detail(&groups(study, answer, (&figures, of_sites), &cautions)))
+        @let explorer = explorer::section(study);
+        (explorer)
+        (words.first_used_in(&explorer))
+        (parts::detail(&groups(study, answer, (&figures, of_sites), &cautions), &mut words))
     };
     let scripts: &[&str] = if findings.surface.is_some() { &[EXPLORER, PARTS] } else { &[PARTS] };
     page(&format!("{} – briefing", study.title), &content, scripts)
@@ -125,7 +133,7 @@ fn groups(
         Group::new(
             "Odds and single years",
             [
-                part("years", "Years", years::section(study, answer, figures)),
+                part("years", "Single years, and means of several", years::section(study, answer, figures)),
                 part("dry-and-warm", "Dry years and warm ones", places::years(answer, figures)),
                 part("replayed-years", "Remembered years, replayed", replayed_years::section(study)),
                 part("percent-of-median", "Percent of median", normal::section(study)),
@@ -157,7 +165,7 @@ fn groups(
             [
                 part("cautions", "Cautions", html! { ul { @for caution in cautions { li { (caution) } } } }),
                 part(
-                    "terms",
+                    GLOSSARY,
                     "Terms",
                     html! { dl { @for (term, meaning) in terms::terms(study.reader) { dt { (term) } dd { (meaning) } } } },
                 ),

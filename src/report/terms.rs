@@ -4,7 +4,7 @@ use super::reader::Reader;
 use crate::season::{BARE_MM, LEAST_PEAK_MM, RAIN_ON_SNOW_MM};
 
 /// Terms and their meanings, in a reader's units.
-pub(super) fn terms(reader: Reader) -> [(&'static str, String); 37] {
+pub(super) fn terms(reader: Reader) -> [(&'static str, String); 40] {
     let water_equivalent = format!("depth of water if the snow were melted, {}", reader.units.depth().word);
     let warming_level = format!(
         "degrees added to the record's temperatures, whose own climate is {}; all levels are compared with the reference",
@@ -25,7 +25,7 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 37] {
          and snowy ground",
         reader.limit(RAIN_ON_SNOW_MM)
     );
-    let terms: [(&'static str, &str); 37] = [
+    let terms: [(&'static str, &str); 40] = [
         ("Snow water equivalent (SWE)", &water_equivalent),
         ("Water year", "starts on the stated day and is named for the calendar year in which it ends"),
         ("Warming level", &warming_level),
@@ -56,6 +56,15 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 37] {
         (
             "1 April SWE, survey-date SWE",
             "SWE as that day begins: in the daily table, the state at the end of the day before",
+        ),
+        (
+            "Reference",
+            "the level that all others are compared with: the record's own climate, unless the study states another",
+        ),
+        ("Median", "the middle one when all are put in order: half of them lie below it, half above"),
+        (
+            "Monte Carlo",
+            "how far a number would move with other realizations of the same kind; not how far the model or the record may be off",
         ),
         ("Half spread", "from the reference's median to the end of its spread that a shift points to"),
         ("Weather spread", "the same range over single years"),

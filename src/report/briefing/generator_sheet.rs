@@ -51,7 +51,7 @@ fn table(
     html! { @if !subjects.is_empty() { div.scroll { table {
         caption { (caption) }
         thead { tr {
-            th scope="col" { }
+            th scope="col" { "Statistic" }
             th scope="col" { "Record" }
             th scope="col" { "Realizations' median" }
             th scope="col" { "5\u{2013}95 %" }

@@ -1,5 +1,6 @@
 "use strict";
-// Folds the parts; opens the one that an address or a link leads to, and all of them for the printer.
+// Folds the parts; opens the one that an address or a link leads to, and all of them for the printer. Tables that are wider than the
+// page can be reached and moved by the keyboard.
 (() => {
   const parts = [...document.querySelectorAll("details.part")];
   const opened = () => {
@@ -19,6 +20,15 @@
   addEventListener("afterprint", () => {
     for (const part of before) part.open = false;
   });
+  const wide = () => {
+    for (const box of document.querySelectorAll(".scroll")) {
+      if (box.scrollWidth > box.clientWidth) box.tabIndex = 0;
+      else box.removeAttribute("tabindex");
+    }
+  };
   addEventListener("hashchange", opened);
+  addEventListener("resize", wide);
+  document.addEventListener("toggle", wide, true);
   opened();
+  wide();
 })();

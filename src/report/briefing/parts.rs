@@ -2,7 +2,11 @@
 //!
 //! Every part stands open in the page's text, so that it is read and printed without any script; the page's script folds them.
 
+use super::words::Words;
 use maud::{Markup, html};
+
+/// Where all words are explained.
+pub(super) const GLOSSARY: &str = "terms";
 
 /// Where a link in the page leads, what is there, and its content.
 pub(super) struct Part {
@@ -29,8 +33,8 @@ impl Group {
     }
 }
 
-/// The list of the parts, then the parts.
-pub(super) fn detail(groups: &[Group]) -> Markup {
+/// The list of the parts, then the parts, each with the words that it uses first.
+pub(super) fn detail(groups: &[Group], words: &mut Words<'_>) -> Markup {
     let groups = groups.iter().filter(|group| !group.parts.is_empty());
     html! {
         nav.contents aria-labelledby="contents" {
@@ -45,7 +49,10 @@ pub(super) fn detail(groups: &[Group]) -> Markup {
                 h2 { (group.title) }
                 @for part in &group.parts { details.part open {
                     summary { h3 { (part.title) } }
-                    div.inside id=(part.address) { (part.content) }
+                    div.inside id=(part.address) {
+                        @if part.address != GLOSSARY { (words.first_used_in(&part.content)) }
+                        (part.content)
+                    }
                 } }
             }
         }

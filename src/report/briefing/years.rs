@@ -69,7 +69,7 @@ fn odds(findings: &Findings, low: &LowSnow, reader: Reader) -> Markup {
             "Low-snow years: below " (reader.amount(low.below_mm.value)) ", the " (fixed(100.0 * low.below_quantile, 0))
             " % quantile of the reference's single years; of " (fixed(low.years as f64, 0)) " simulated years a level."
         }
-        (heading(findings, "", reader))
+        (heading(findings, "Statistic", reader))
         tbody {
             tr { th scope="row" { "Low" } @for level in &low.levels { td { (in_years(level.chance.value)) } } }
             tr { th scope="row" { "Chance" } @for level in &low.levels { td {
@@ -89,7 +89,7 @@ fn of_record(findings: &Findings, low: &LowSnow, reader: Reader) -> Markup {
              Wilson (1927), and the ratio to the reference's with its 95 % interval after Katz et al. (1978), which takes the two counts for \
              independent."
         }
-        (heading(findings, "", reader))
+        (heading(findings, "Statistic", reader))
         tbody {
             tr { th scope="row" { "Low years" } @for level in &record.levels { td { (level.low_years) } } }
             tr { th scope="row" { "95 % interval" } @for level in &record.levels {
@@ -254,7 +254,7 @@ fn tails(findings: &Findings, measure: &MeasureByYear, reader: Reader) -> Markup
         caption {
             (crate::figures::sentence(&measure.measure.title)) ", single years, " (depth.word) "; below it the change from the reference and its 5–95 % range."
         }
-        (heading(findings, "", reader))
+        (heading(findings, "Statistic", reader))
         tbody { @for (name, of) in rows { tr {
             th scope="row" { (name) }
             @for level in &measure.tails { td {
