@@ -13,8 +13,8 @@ use std::collections::BTreeSet;
 /// What was typed.
 #[derive(Debug, Clone, Copy, Args)]
 pub(super) struct Pictures {
-    /// Leave every figure as a PNG picture, too, WIDTH pixels wide; figures are drawn 760 wide, so that 1520 is twice as
-    /// fine
+    /// Leave every figure as a PNG picture, too, WIDTH pixels wide (400 to 8000); figures are drawn 760 wide, so that
+    /// 1520 is twice as fine
     #[arg(long = "png", value_name = "WIDTH", value_parser = clap::value_parser!(u32).range(400..=8000))]
     pub width_px: Option<u32>,
 }

@@ -7,7 +7,8 @@
 use super::measure::Asked;
 use super::quantile::{quantile, sorted};
 use super::resample::Resamples;
-use super::surface::{Change, Nodes, SurfaceQuestions};
+use super::surface::{Change, SurfaceQuestions};
+use super::surface_nodes::Nodes;
 use super::tipping::{Asks, Criterion, TippingLevel};
 use super::yardstick::Levels;
 use super::{Crossing, CrossingRange, Root};

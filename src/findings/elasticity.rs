@@ -2,7 +2,8 @@
 
 use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Ranked, Resamples};
-use super::surface::{Change, Nodes, SurfaceQuestions};
+use super::surface::{Change, SurfaceQuestions};
+use super::surface_nodes::Nodes;
 use crate::season::LEAST_REFERENCE_MM;
 use serde::Serialize;
 

@@ -48,6 +48,7 @@ mod snow_drought;
 mod snow_line;
 mod spread;
 mod surface;
+mod surface_nodes;
 mod tails;
 mod temperature_held;
 mod three_way;
@@ -116,9 +117,10 @@ pub use snow_drought::{SnowDroughtLevel, SnowDroughts};
 pub use snow_line::{SnowLine, SnowLineLevel};
 pub use spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
 pub use surface::{
-    Change, ChangeOrigin, CurvePoint, NamedChange, NamedNode, NodeMeasure, Nodes, Realized, ResponseSurface,
+    Change, ChangeOrigin, CurvePoint, NamedChange, NamedNode, NodeMeasure, Realized, ResponseSurface,
     SurfaceNode, SurfaceQuestions,
 };
+pub use surface_nodes::Nodes;
 pub use tails::{TailChanges, Tails};
 pub use temperature_held::{HeldLevel, TemperatureHeldSpread};
 pub use three_way::{AveragedShares, ThreeWay, ThreeWayShares};

@@ -4,7 +4,8 @@
 //! preprint).
 
 use super::crossing::{Crossing, CrossingRange, range_of};
-use super::surface::{Change, Nodes};
+use super::surface::Change;
+use super::surface_nodes::Nodes;
 use serde::Serialize;
 
 /// The increase that is asked about, percent.

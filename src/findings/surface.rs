@@ -6,15 +6,13 @@ use super::elasticity::Slopes;
 use super::offset::{INCREASE_PCT, Offset, between};
 use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Ranked, Resamples};
+use super::surface_nodes::Nodes;
 use super::tipping::{Criterion, FailureLine};
 use crate::basin::Band;
 use crate::ensemble::NodeRuns;
 use crate::season::{Kind, MELT_OUT_DAY, Measure, Outcome};
 use ndarray::Axis;
 use serde::Serialize;
-
-/// Measures that stand on the surface beside the headline's and the first volume: half of the net melt done, melt-out, days under snow.
-const BESIDE: [&str; 3] = ["melt_d50_day", MELT_OUT_DAY, "snow_covered_days"];
 
 /// A change of climate: every day warmer by so much, and all its precipitation changed by so much.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
@@ -160,14 +158,6 @@ pub struct Realized {
     pub wetter_pct: f64,
 }
 
-/// All nodes that were run.
-#[derive(Debug, Clone)]
-pub struct Nodes {
-    changes: Vec<Change>,
-    runs: NodeRuns,
-    resamples: Resamples,
-}
-
 impl SurfaceQuestions<'_> {
     /// Every change that has to be run, none twice; the reference is the first.
     pub fn changes(&self) -> Vec<Change> {
@@ -207,8 +197,7 @@ impl SurfaceQuestions<'_> {
 
     /// Answers from the nodes; the curve, found by runs of its own, is added to it.
     pub fn answer(&self, nodes: &Nodes, curve: &[(f64, Root)], realized: &[Realized]) -> ResponseSurface {
-        let shown = nodes.shown();
-        let node = |change: Change| nodes.node(change, &shown);
+        let node = |change: Change| nodes.node(change);
         let grid = |warming_c: f64| {
             self.precipitation_changes_pct
                 .iter()
@@ -221,12 +210,12 @@ impl SurfaceQuestions<'_> {
         let break_even: Vec<CurvePoint> =
             curve.iter().map(|(warming_c, root)| self.point(nodes, *warming_c, *root)).collect();
         ResponseSurface {
-            realizations: nodes.runs.periods.len_of(Axis(2)),
+            realizations: nodes.realizations(),
             levels_warm_alone: self.levels_warm_alone,
             warmings_c: self.warmings_c.clone(),
             precipitation_changes_pct: self.precipitation_changes_pct.clone(),
             reference_median_mm: nodes.median(reference).unwrap_or(f64::NAN),
-            measures: shown.iter().map(|at| nodes.runs.measures[*at].clone()).collect(),
+            measures: nodes.measures(),
             nodes: self.warmings_c.iter().copied().flat_map(grid).filter_map(node).collect(),
             named: named.collect(),
             offset: Offset::of(nodes, &self.warmings_c, self.reference_c),
@@ -294,104 +283,6 @@ fn root_between(places: &[f64], values: &[f64]) -> Option<f64> {
         None if values.iter().all(|value| *value >= 0.0) => Some(f64::NEG_INFINITY),
         None => values.iter().all(|value| *value < 0.0).then_some(f64::INFINITY),
     }
-}
-
-impl Nodes {
-    /// What the runs came to, a node each change; `seed` is the study's.
-    pub fn new(changes: Vec<Change>, runs: NodeRuns, seed: u64) -> Self {
-        let resamples = Resamples::new(seed, runs.periods.len_of(Axis(2)));
-        Self { changes, runs, resamples }
-    }
-
-    fn at(&self, change: Change) -> Option<usize> {
-        self.changes.iter().position(|run| *run == change)
-    }
-
-    /// Median period value of the headline measure at a change, mm; none where it was not run.
-    pub fn median(&self, change: Change) -> Option<f64> {
-        let at = self.at(change)?;
-        Some(quantile(&sorted(self.period_values(at, 0)), 0.5))
-    }
-
-    fn period_values(&self, node: usize, measure: usize) -> Vec<f64> {
-        self.runs.periods.index_axis(Axis(0), node).row(measure).to_vec()
-    }
-
-    /// SWE on the survey date of each band at a change, `[band][realization]`, mm.
-    pub(super) fn of_band(&self, change: Change, band: usize) -> Option<Vec<f64>> {
-        Some(self.runs.band_swe_mm.index_axis(Axis(0), self.at(change)?).row(band).to_vec())
-    }
-
-    /// The headline's period values at a change, a realization each, mm.
-    pub(super) fn of_basin(&self, change: Change) -> Option<Vec<f64>> {
-        Some(self.period_values(self.at(change)?, 0))
-    }
-
-    /// The headline of single years of all realizations at a change, mm.
-    pub(super) fn single_years(&self, change: Change) -> Option<Vec<f64>> {
-        Some(self.runs.survey_swe_mm.index_axis(Axis(0), self.at(change)?).iter().copied().collect())
-    }
-
-    pub(super) fn resamples(&self) -> &Resamples {
-        &self.resamples
-    }
-
-    /// The same runs and those of other changes; both begin with the reference.
-    #[must_use]
-    pub fn and(self, other: Self) -> Self {
-        let changes = self.changes.into_iter().chain(other.changes.into_iter().skip(1)).collect();
-        Self { changes, runs: self.runs.and(&other.runs), resamples: self.resamples }
-    }
-
-    pub(super) fn resampled_medians(&self, change: Change) -> Option<Vec<f64>> {
-        let ranked = Ranked::new(self.of_basin(change)?.into_iter().zip(0..));
-        let median = |weights: &[u32]| ranked.quantiles(weights, [0.5]).map_or(f64::NAN, |[median]| median);
-        Some(self.resamples.each(median))
-    }
-
-    /// Places of the measures that stand on the surface.
-    fn shown(&self) -> Vec<usize> {
-        let measures = &self.runs.measures;
-        let beside = |name: &&str| measures.iter().position(|measure| measure.name == **name);
-        let volume = measures.iter().position(|measure| measure.is_volume);
-        std::iter::once(0).chain(volume).chain(BESIDE.iter().filter_map(beside)).collect()
-    }
-
-    fn node(&self, change: Change, shown: &[usize]) -> Option<SurfaceNode> {
-        let node = self.at(change)?;
-        let measures = shown.iter().map(|at| self.measure(node, *at)).collect();
-        let of_bands = self.runs.band_swe_mm.index_axis(Axis(0), node);
-        let band_swe_mm =
-            of_bands.outer_iter().map(|of_band| quantile(&sorted(of_band.iter().copied()), 0.5));
-        Some(SurfaceNode { change, measures, band_swe_mm: band_swe_mm.collect() })
-    }
-
-    fn measure(&self, node: usize, at: usize) -> NodeMeasure {
-        let kind = self.runs.measures[at].kind;
-        let [here, reference] = [node, 0].map(|node| {
-            let values = self.period_values(node, at);
-            let median = quantile(&sorted(values.iter().copied()), 0.5);
-            let ranked = Ranked::new(values.into_iter().zip(0..));
-            (median, ranked)
-        });
-        let difference =
-            |here: f64, reference: f64| Some(here - reference).filter(|change| change.is_finite());
-        let percent = |here: f64, reference: f64| percent_of(kind, here, reference);
-        let both = |of: &dyn Fn(f64, f64) -> Option<f64>| {
-            let resampled = self.resamples.each(|weights| {
-                let [[here], [reference]] =
-                    [here.1.quantiles(weights, [0.5])?, reference.1.quantiles(weights, [0.5])?];
-                of(here, reference)
-            });
-            Some(Estimate::new(of(here.0, reference.0)?, resampled))
-        };
-        NodeMeasure { median: kind.outcome(here.0), change: both(&difference), change_pct: both(&percent) }
-    }
-}
-
-/// How far one median lies above another, percent of that; none where it is too small for a percentage, or of no such kind.
-fn percent_of(kind: Kind, here: f64, reference: f64) -> Option<f64> {
-    super::shift::percent_change(kind, here - reference, reference)
 }
 
 #[cfg(test)]

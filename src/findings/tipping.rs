@@ -3,7 +3,8 @@
 use super::crossing::{Crossing, CrossingRange, range_of};
 use super::quantile::{quantile, sorted};
 use super::resample::{Estimate, Ranked, Resamples};
-use super::surface::{Change, Nodes, SurfaceQuestions};
+use super::surface::{Change, SurfaceQuestions};
+use super::surface_nodes::Nodes;
 use ndarray::ArrayView3;
 use serde::Serialize;
 

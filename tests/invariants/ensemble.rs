@@ -303,6 +303,8 @@ proptest! {
             .map(|(level, lanes)| LevelGroup { lanes, generator: &weather[level % 2] })
             .collect();
         let together = study.run_groups(&groups, 2, size, Path::Widest);
+        // High bands under a steep gradient can keep their snow all the same; the first measure is SWE as a water year begins.
+        prop_assume!(together.basin.years.index_axis(Axis(1), 0).iter().all(|swe_mm| *swe_mm == 0.0));
         let records: Vec<Vec<&dyn Generator>> = vec![groups.iter().map(|group| group.generator).collect(); 2];
         let plan = study.plan(&groups, size, Path::Widest);
         for of_record in run_records(&plan, &records, &Silent).expect("a closed ledger") {
