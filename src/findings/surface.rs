@@ -5,13 +5,11 @@ use super::break_even::{Root, Stays};
 use super::elasticity::Slopes;
 use super::offset::{INCREASE_PCT, Offset, between};
 use super::quantile::{quantile, sorted};
-use super::resample::{Estimate, Ranked, Resamples};
+use super::resample::Estimate;
 use super::surface_nodes::Nodes;
 use super::tipping::{Criterion, FailureLine};
 use crate::basin::Band;
-use crate::ensemble::NodeRuns;
-use crate::season::{Kind, MELT_OUT_DAY, Measure, Outcome};
-use ndarray::Axis;
+use crate::season::{Measure, Outcome};
 use serde::Serialize;
 
 /// A change of climate: every day warmer by so much, and all its precipitation changed by so much.
