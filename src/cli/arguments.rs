@@ -83,6 +83,19 @@ pub(super) enum Command {
     Manual,
 }
 
+impl Command {
+    /// Where it writes, of a command that has no use for `--into`.
+    pub fn writes_elsewhere(&self) -> Option<&'static str> {
+        match self {
+            Self::Check { .. } => Some("check writes nothing"),
+            Self::Start { .. } => Some("start writes into the folder that it is given"),
+            Self::Completions { .. } => Some("completions go to standard output"),
+            Self::Manual => Some("the manual goes to standard output"),
+            Self::Study { .. } | Self::Daily { .. } | Self::Fit { .. } | Self::Weather { .. } => None,
+        }
+    }
+}
+
 /// When to colour.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
 pub(super) enum Colour {

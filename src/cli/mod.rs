@@ -51,6 +51,10 @@ pub fn run() -> u8 {
         Err(error) => return help::instead_of_a_command(&error),
     };
     let shared = arguments.shared;
+    if let Some(place) = arguments.command.writes_elsewhere().filter(|_| shared.into.is_some()) {
+        let failure = Failure::CommandLine(format!("{place}: leave --into out"));
+        return last_words::say(&failure, &shared);
+    }
     let result = match arguments.command {
         Command::Study { scenario, open, pictures } => study::run(&scenario, open, pictures, &shared),
         Command::Daily { scenario, draw_years, draw_band, pictures } => {
