@@ -141,3 +141,19 @@ fn warmer_is_darker_so_that_grey_keeps_the_order() {
         assert!(light.is_sorted_by(|a, b| a > b), "{light:?}");
     }
 }
+
+/// A field that is read as a map needs equal steps: L* falls all the way from none on, to loss and to gain, and no step is more than
+/// twice another (Crameri, Shephard & Heron 2020 ask for even gradients; the bound is ours).
+#[test]
+fn grounds_of_change_darken_evenly() {
+    let (_, _, normal) = SIGHTS[0];
+    for direction in [-1, 1] {
+        let light: Vec<f64> =
+            (0..=4).map(|steps| lab(theme::change_ground(direction * steps), &normal)[0]).collect();
+        let falls: Vec<f64> = light.windows(2).map(|pair| pair[0] - pair[1]).collect();
+        let (least, most) = falls
+            .iter()
+            .fold((f64::INFINITY, 0.0_f64), |(low, high), fall| (low.min(*fall), high.max(*fall)));
+        assert!(least > 2.0 && most <= 2.0 * least, "{light:?}");
+    }
+}

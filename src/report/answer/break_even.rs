@@ -96,8 +96,8 @@ fn of_level(
     let so_wet = match (at.realizations_that_reached, reached.realizations) {
         (0, 1) => "the one realization did not come".to_owned(),
         (_, 1) => "the one realization came".to_owned(),
-        (0, all) => format!("none of {all} realizations came"),
-        (count, all) => format!("{count} of {all} realizations came"),
+        (0, all) => format!("none of {} came", counted(all, "realization")),
+        (count, all) => format!("{} of {} came", fixed(count as f64, 0), counted(all, "realization")),
     };
     Some(format!(
         "At {level}, {size} % more precipitation on every wet day{on_top} would bring the {name} back to the reference's median; {so_wet} \

@@ -1,6 +1,6 @@
 //! The verdict in one sentence, and how much each level changes.
 
-use super::super::numbers::{fixed, signed};
+use super::super::numbers::{counted, fixed, signed};
 use super::super::reader::Reader;
 use super::{is_scarce, period_name};
 use crate::findings::{CrossingRange, Findings, Judged, LevelFindings, MeasureFindings, Weight, judged};
@@ -142,7 +142,7 @@ pub(super) fn how_much(
     };
     let over = match shift.pairs {
         1 => "the one realization against itself".to_owned(),
-        pairs => format!("the median over {pairs} realizations, each against itself"),
+        pairs => format!("the median over {}, each against itself", counted(pairs, "realization")),
     };
     format!(
         "At {}, the {} {change}{percent}: {over}{range}{ratio}.",
