@@ -27,7 +27,7 @@ mod years;
 use super::answer::Answer;
 use super::generator_sheet::snow_mismatch;
 use super::numbers::counted;
-use super::page::{figure, page};
+use super::page::{figure, page, repeat};
 use super::study::Study;
 use super::{cautions, terms};
 use crate::basin::Basin;
@@ -58,6 +58,7 @@ pub fn briefing_html(
     let cautions = cautions::cautions(study.reader, study.warming, &study.snow.options);
     let terms = terms::terms(study.reader);
     let mut words = Words::new(&terms);
+    let explorer = explorer::section(study);
     let content = html! {
         p.over {
             (counted(findings.realizations, "realization")) " of " (counted(findings.years, "water year")) " under "
@@ -91,12 +92,11 @@ pub fn briefing_html(
             @let file = format!("figures/{}.svg", slide.slug);
             p { "The answer for a slide, 16 to 9: " a href=(file) { (file) } "." }
         }
-        @let explorer = explorer::section(study);
         (explorer)
         (words.first_used_in(&explorer))
-        (parts::detail(&groups(study, answer, (&figures, of_sites), &cautions), &mut words))
+        (parts::detail(&groups(study, answer, (&figures, of_sites), (&cautions, &terms)), &mut words))
     };
-    let scripts: &[&str] = if findings.surface.is_some() { &[EXPLORER, PARTS] } else { &[PARTS] };
+    let scripts: &[&str] = if explorer.0.is_empty() { &[PARTS] } else { &[EXPLORER, PARTS] };
     page(&format!("{} – briefing", study.title), &content, scripts)
 }
 
@@ -105,7 +105,7 @@ fn groups(
     study: &Study<'_>,
     answer: &Answer,
     (figures, of_sites): (&Figures<'_>, &[(String, Svg)]),
-    cautions: &[String],
+    (cautions, terms): (&[String], &[(&'static str, String)]),
 ) -> [Group; 6] {
     [
         Group::new(
@@ -167,10 +167,10 @@ fn groups(
                 part(
                     GLOSSARY,
                     "Terms",
-                    html! { dl { @for (term, meaning) in terms::terms(study.reader) { dt { (term) } dd { (meaning) } } } },
+                    html! { dl { @for (term, meaning) in terms { dt { (term) } dd { (meaning) } } } },
                 ),
                 part("sources", "Sources of the methods", sources::section()),
-                part("repeat", "How to repeat it", repeat(study)),
+                part("repeat", "How to repeat it", repeat(&study.origin)),
             ],
         ),
     ]
@@ -216,13 +216,6 @@ impl Figures<'_> {
     /// The figures of a part, in their order.
     fn of(&self, part: Part) -> Markup {
         html! { @for (of, svg) in self.0.iter().filter(|(of, _)| of.part == part) { (figure(svg, of.slug, Some(of.table))) } }
-    }
-}
-
-fn repeat(study: &Study<'_>) -> Markup {
-    html! {
-        p { code { (study.origin.command) } " with seed " (study.origin.seed) " and thawline " (env!("CARGO_PKG_VERSION")) ". Input files and their SHA-256:" }
-        ul { @for input in &study.origin.inputs { li { (input.role) ": " code { (input.path) } " " code { (input.sha256) } } } }
     }
 }
 

@@ -1,6 +1,7 @@
 //! A self-contained page: its style, its figures, and a policy by which nothing is fetched and no script but its own runs.
 
 use super::cautions::PLANNING_AID;
+use super::study::Origin;
 use crate::figures::Svg;
 use maud::{DOCTYPE, Markup, PreEscaped, html};
 use sha2::{Digest, Sha256};
@@ -59,6 +60,14 @@ fn unbroken(page: &str) -> String {
     }
     bound.push_str(&bind(rest));
     bound
+}
+
+/// What repeats the run, and from which files.
+pub(super) fn repeat(origin: &Origin) -> Markup {
+    html! {
+        p { code { (origin.command) } " with seed " (origin.seed) " and thawline " (env!("CARGO_PKG_VERSION")) ". Input files and their SHA-256:" }
+        ul { @for input in &origin.inputs { li { (input.role) ": " code { (input.path) } " " code { (input.sha256) } } } }
+    }
 }
 
 /// A figure, how to read it, and where it and its numbers stand as files beside the page.

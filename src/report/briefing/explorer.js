@@ -8,6 +8,7 @@
     { name: "precipitation", key: "precipitation_change_pct", places: runs.changes_pct, start: 0, reference: 0 },
   ].map((axis) => ({ ...axis, slider: at(`explorer-${axis.name}`), typed: at(`explorer-${axis.name}-typed`) }));
   const columns = runs.changes_pct.length;
+  const said = runs.words;
 
   // Numbers as the rest of the page writes them.
   const fixed = (value, decimals) => {
@@ -32,10 +33,12 @@
     const found = new Date(Date.UTC(month > 1 || first > 1 ? 2001 : 2002, month - 1, first + whole - 1));
     return `${found.getUTCDate()} ${runs.months[found.getUTCMonth()]}`;
   };
+  const say = (words, parts) => words.replace(/\{(\w+)\}/g, (_, name) => parts[name]);
   const moved = (days) => {
     const whole = Math.round(Math.abs(days));
-    if (whole === 0) return "unchanged to the day";
-    return `${whole} ${whole === 1 ? "day" : "days"} ${days < 0 ? "earlier" : "later"}`;
+    if (whole === 0) return said.unchanged;
+    const [one, several] = days < 0 ? said.earlier : said.later;
+    return whole === 1 ? one : say(several, { days: whole });
   };
   const written = (row, value) => (row.kind === "date" ? date(value) : `${fixed(value, decimals(row, value))} ${row.unit}`);
   const changed = (row, change, reference) => {
@@ -93,12 +96,11 @@
     return { row, cells, bar, share };
   });
 
-  const name = ([warming, change]) =>
-    `${signed(warming, Number.isInteger(warming) ? 0 : 1)} ${runs.warming_unit} and ${signed(change, Number.isInteger(change) ? 0 : 1)} % precipitation`;
-  const show = (pair) => {
-    const found = nodes(pair);
+  const short = (value) => signed(value, Number.isInteger(value) ? 0 : 1);
+  const show = ([warming, change]) => {
+    const found = nodes([warming, change]);
     const [headline] = runs.measures;
-    const range = (axis) => [axis.places[0], axis.places.at(-1)].map((end) => signed(end, Number.isInteger(end) ? 0 : 1)).join(" to ");
+    const pair = say(said.pair, { warming: short(warming), change: short(change) });
     for (const { row, cells } of basin) {
       const [value, before] = [found && read(row.nodes, found), read(row.nodes, reference)];
       const error = found && largest(row.errors, found);
@@ -118,19 +120,20 @@
       share.textContent = left === null ? none : `${fixed(left, 0)}\u00a0%`;
     }
     if (!found) {
-      return `Nothing was run at ${name(pair)}: runs reach from ${range(axes[0])} ${runs.warming_unit} and from ${range(axes[1])} % precipitation.`;
+      const ends = axes.flatMap(({ places }) => [places[0], places.at(-1)].map(short));
+      return say(said.outside, { pair, coldest: ends[0], warmest: ends[1], driest: ends[2], wettest: ends[3] });
     }
     const [value, before] = [read(headline.nodes, found), read(headline.nodes, reference)];
-    if (value === null || before === null) return `At ${name(pair)} there is no ${headline.title}.`;
-    const kind = found.length === 1 ? "run at this very pair" : "read between runs";
-    return `${name(pair)}: ${headline.title} ${written(headline, value)}, ${changed(headline, value - before, before)} against the reference; ${kind}.`;
+    if (value === null || before === null) return say(said.without, { pair });
+    const words = found.length === 1 ? said.at_node : said.between;
+    return say(words, { pair, value: written(headline, value), change: changed(headline, value - before, before) });
   };
 
   const pair = () => axes.map((axis) => axis.typed.valueAsNumber);
   const shared = () => axes.map((axis) => `${axis.key}=${axis.typed.value}`).join("&");
   const update = (isShared) => {
     const now = pair();
-    at("explorer-said").textContent = now.some(Number.isNaN) ? "A number is missing." : show(now);
+    at("explorer-said").textContent = now.some(Number.isNaN) ? said.missing : show(now);
     if (isShared && !now.some(Number.isNaN)) history.replaceState(null, "", `#${shared()}`);
   };
   const set = (values) => axes.forEach((axis, place) => {

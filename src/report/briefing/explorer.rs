@@ -1,7 +1,7 @@
 //! Any warming with any change of precipitation, read between the response surface's runs by the page's own script.
 
-use super::super::answer::telling_level;
-use super::super::numbers::{Decimals, counted};
+use super::super::answer::{is_scarce, telling_level};
+use super::super::numbers::{Decimals, counted, days_moved};
 use super::super::reader::{Reader, VOLUME_DECIMALS};
 use super::super::study::Study;
 use crate::basin::told_apart;
@@ -21,7 +21,6 @@ const WHOLE: Decimals = Decimals { below: &[], otherwise: 0 };
 #[derive(Serialize)]
 struct Runs {
     warming_key: String,
-    warming_unit: &'static str,
     warmings: Vec<f64>,
     changes_pct: Vec<f64>,
     reference: f64,
@@ -31,6 +30,47 @@ struct Runs {
     months: [&'static str; 12],
     measures: Vec<Row>,
     bands: Vec<Row>,
+    words: Said,
+}
+
+/// What the script says, with names in braces where it puts numbers.
+#[derive(Serialize)]
+struct Said {
+    pair: String,
+    at_node: String,
+    between: String,
+    without: String,
+    outside: String,
+    missing: &'static str,
+    unchanged: String,
+    /// By one day, and by several.
+    earlier: [String; 2],
+    later: [String; 2],
+}
+
+impl Said {
+    fn of(reader: Reader, title: &str) -> Self {
+        let unit = reader.units.warming().word;
+        let found =
+            |how: &str| format!("{{pair}}: {title} {{value}}, {{change}} against the reference; {how}.");
+        // As the rest of the page says it.
+        let by =
+            |direction: f64| [days_moved(direction), days_moved(2.0 * direction).replacen('2', "{days}", 1)];
+        Self {
+            pair: format!("{{warming}} {unit} and {{change}} % precipitation"),
+            at_node: found("run at this very pair"),
+            between: found("read between runs"),
+            without: format!("At {{pair}} there is no {title}."),
+            outside: format!(
+                "Nothing was run at {{pair}}: runs reach from {{coldest}} to {{warmest}} {unit} and from {{driest}} to {{wettest}} % \
+                 precipitation."
+            ),
+            missing: "A number is missing.",
+            unchanged: days_moved(0.0),
+            earlier: by(-1.0),
+            later: by(1.0),
+        }
+    }
 }
 
 /// A number that the explorer tells, at every node; all changes of the first warming before those of the second.
@@ -47,9 +87,10 @@ struct Row {
     errors: Vec<Option<f64>>,
 }
 
-/// The section and what its script reads; nothing where no surface was run.
+/// The section and what its script reads; nothing where no surface was run or there is hardly any snow.
 pub(super) fn section(study: &Study<'_>) -> Markup {
-    let Some(surface) = &study.findings.surface else {
+    let has_snow = study.findings.basin.first().is_some_and(|headline| !is_scarce(headline));
+    let Some(surface) = study.findings.surface.as_ref().filter(|_| has_snow) else {
         return html! {};
     };
     let reader = study.reader;
@@ -124,7 +165,6 @@ fn runs(study: &Study<'_>, surface: &ResponseSurface) -> Runs {
     let starts = reader.starts.0;
     Runs {
         warming_key: format!("warming_{}", warming.suffix),
-        warming_unit: warming.word,
         warmings: surface.warmings_c.iter().map(|warming_c| warming.of(*warming_c)).collect(),
         changes_pct: surface.precipitation_changes_pct.clone(),
         reference: warming.of(findings.levels_c[findings.reference]),
@@ -133,6 +173,7 @@ fn runs(study: &Study<'_>, surface: &ResponseSurface) -> Runs {
         months: MONTHS,
         measures: surface.measures.iter().enumerate().filter_map(row).collect(),
         bands: bands(study, surface),
+        words: Said::of(reader, surface.measures.first().map_or("", |headline| headline.title.as_str())),
     }
 }
 

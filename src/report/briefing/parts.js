@@ -4,7 +4,7 @@
 (() => {
   const parts = [...document.querySelectorAll("details.part")];
   const opened = () => {
-    const target = document.getElementById(decodeURIComponent(location.hash.slice(1)));
+    const target = document.getElementById(location.hash.slice(1));
     const part = target && target.closest("details.part");
     if (part) {
       part.open = true;
