@@ -17,11 +17,11 @@ pub(super) fn tables(report: &FitReport<'_>) -> Markup {
     let sites: Vec<&str> = report.result.fitted[0].on_own.iter().map(|judged| judged.site.as_str()).collect();
     html! { @for (at, site) in sites.iter().enumerate() {
         @if sites.len() > 1 { h3 { (site) } }
-        (table(report, at, "Skill", &["NSE", "KGE", "skill"], skill))
+        (table(report, at, ["Skill", "The higher, the better; 1 is perfect"], &["NSE", "KGE", "skill"], skill))
         (table(
             report,
             at,
-            "Errors",
+            ["Errors", "Modelled less observed: the nearer to 0, the better"],
             &["peak, %", "survey, %", "melt-out, days", "its size, days", "slope, % per °C"],
             errors,
         ))
@@ -32,11 +32,12 @@ pub(super) fn tables(report: &FitReport<'_>) -> Markup {
 fn table(
     report: &FitReport<'_>,
     site: usize,
-    name: &str,
+    [name, caption]: [&str; 2],
     heads: &[&str],
     cells: fn(&Judged) -> Vec<String>,
 ) -> Markup {
     html! { div.scroll { table.narrow.grouped {
+        caption { (caption) }
         thead { tr { th.text scope="col" { (name) } @for head in heads { th scope="col" { (head) } } } }
         @for split in Split::EACH { tbody {
             tr { th.text scope="rowgroup" colspan=(heads.len() + 1) { "In " (split.words()) (years(report, split, site)) } }

@@ -15,6 +15,7 @@ pub(super) fn section(left_out: &[LeftOut]) -> Markup {
             @if left_out.is_empty() { "Here they found none." }
         }
         @if !left_out.is_empty() { div.scroll { table.narrow {
+            caption { "Winters in which the record itself is at fault" }
             thead { tr {
                 th.text scope="col" { "Site" } th scope="col" { "Water year" } th.text scope="col" { "Found" }
                 th.text scope="col" { "Left out because" }

@@ -6,7 +6,7 @@ use super::super::page;
 use super::figures::Drawn;
 use super::left_out;
 use super::{FitReport, PARAMETERS_FILE, effort, errors, of_other_years, values};
-use crate::figures::FitPart;
+use crate::figures::{FitPart, SITE_FIGURES};
 use maud::html;
 
 /// The page.
@@ -25,7 +25,7 @@ pub(super) fn page(report: &FitReport<'_>, drawn: &Drawn) -> Vec<u8> {
             code { "[snow]" } ", by a path from the scenario's folder, and take out of the scenario the keys that it states itself."
         }
         h2 { "Skill in winters seen and not seen" }
-        @for (slug, svg) in drawn.of(FitPart::Skill) { (page::figure(svg, slug, None)) }
+        @for (slug, svg) in drawn.of(FitPart::Skill) { (page::figure(svg, slug, Some("fit-winters"))) }
         (errors::tables(report))
         p {
             "Errors are modelled less observed. NSE is the Nash-Sutcliffe efficiency over all readings, KGE the Kling-Gupta efficiency of 2009 \
@@ -41,7 +41,7 @@ pub(super) fn page(report: &FitReport<'_>, drawn: &Drawn) -> Vec<u8> {
             "Here the model has the parameters fitted on all years, these years among them: it looks better than it is in years that it has \
              not seen."
         }
-        @for (slug, svg) in &drawn.of_sites { (page::figure(svg, slug, None)) }
+        @for (slug, svg) in &drawn.of_sites { (page::figure(svg, slug, Some(SITE_FIGURES[0].table))) }
         p {
             "Every year stands in " code { "tables/observed-by-year.csv" } ", every day in " code { "tables/observed-daily.csv" }
             ", each winter as fits make it that have seen it and that have not in " code { "tables/fit-winters.csv" } "."
@@ -72,8 +72,7 @@ pub(super) fn page(report: &FitReport<'_>, drawn: &Drawn) -> Vec<u8> {
             dt { "Objective" } dd { (objective(report)) }
         }
         h2 { "How to repeat it" }
-        p { code { (report.origin.command) } " with seed " (report.origin.seed) " and thawline " (env!("CARGO_PKG_VERSION")) ". Input files and their SHA-256:" }
-        ul { @for input in &report.origin.inputs { li { (input.role) ": " code { (input.path) } " " code { (input.sha256) } } } }
+        (page::repeat(&report.origin))
     };
     page::page(&format!("{} – fit", report.title), &content, &[])
 }
