@@ -113,7 +113,10 @@ pub(super) fn crossing_range(range: Option<CrossingRange>, units: UnitSystem) ->
 
 /// Writing to memory cannot fail.
 pub(in super::super) fn write(writer: &mut Writer<Vec<u8>>, row: &[String]) {
-    let _ = writer.write_record(row.iter().map(|cell| no_formula(cell).into_owned()));
+    for cell in row {
+        let _ = writer.write_field(no_formula(cell).as_bytes());
+    }
+    let _ = writer.write_record(None::<&[u8]>);
 }
 
 /// Cells that a spreadsheet would take for the start of a formula begin so (OWASP ASVS 5.0, 1.2.10).
