@@ -11,14 +11,15 @@ use serde_json::Value;
 
 /// A study of the demo with few realizations, in a folder of its own, and a browser to look at it; nothing without a browser.
 fn page_of(scenario: &str, edit: impl Fn(String) -> String) -> Option<(Chromium, Basin)> {
+    made(scenario, "study", edit)
+}
+
+/// The same of another command.
+fn made(scenario: &str, command: &str, edit: impl Fn(String) -> String) -> Option<(Chromium, Basin)> {
     let browser = Chromium::find()?;
-    let basin = Basin::new();
-    let ended = basin.run("start .");
-    assert_eq!(ended.status, 0, "{}", ended.stderr);
-    let text = basin.read(&format!("scenarios/{scenario}.toml")).replace("../demo-data", "demo-data");
-    let few = text.replacen("[realizations]\n", "[realizations]\ncount = 24\nyears = 6\n", 1);
+    let (basin, few) = Basin::of_demo(scenario, [24, 6]);
     basin.write("mine.toml", &edit(few));
-    let ended = basin.run("study mine.toml --quiet --into out");
+    let ended = basin.run(&format!("{command} mine.toml --quiet --into out"));
     assert_eq!(ended.status, 0, "{}", ended.stderr);
     Some((browser, basin))
 }
@@ -26,7 +27,18 @@ fn page_of(scenario: &str, edit: impl Fn(String) -> String) -> Option<(Chromium,
 /// The page without its policy, in a frame of so many px, with another script at its end that tells the frame's page what it finds.
 /// (A window of its own would be no narrower than 500 px.)
 fn probed(browser: &Chromium, basin: &Basin, (probe, address): (&str, &str), width_px: u32) -> Value {
-    let page = String::from_utf8(basin.read_bytes("out/briefing.html")).unwrap();
+    probed_page(browser, basin, "out/briefing.html", (probe, address), width_px)
+}
+
+/// The same of another page.
+fn probed_page(
+    browser: &Chromium,
+    basin: &Basin,
+    page: &str,
+    (probe, address): (&str, &str),
+    width_px: u32,
+) -> Value {
+    let page = String::from_utf8(basin.read_bytes(page)).unwrap();
     let (before, rest) = page.split_once("<meta http-equiv=\"Content-Security-Policy\"").unwrap();
     let (_, rest) = rest.split_once('>').unwrap();
     let script = format!(

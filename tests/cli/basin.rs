@@ -18,6 +18,15 @@ pub struct Ended {
     pub stderr: String,
 }
 
+/// A fit that takes little time, for the end of a scenario with observed snow.
+pub const SMALL_FIT: &str = r#"
+[fit]
+parameters = ["snow.degree_day_factor_mm_per_c_day.highest", "snow.melt_base_c"]
+starts = 1
+evaluations = 10
+parameter_sets = 2
+"#;
+
 pub const SCENARIO: &str = r#"title = "Test fork"
 seed = 5
 
@@ -50,6 +59,18 @@ impl Basin {
         basin.write("bands.csv", "lower_m,upper_m,area_km2\n1900,2200,40\n2200,2500,25\n");
         basin.write("weather.csv", &weather(3));
         basin
+    }
+
+    /// The demo of this name, as the program writes it, in a folder of its own; and its scenario with so many realizations of so
+    /// many years, for a file at the folder's top.
+    pub fn of_demo(name: &str, [count, years]: [u32; 2]) -> (Self, String) {
+        let basin = Self::new();
+        let ended = basin.run("start .");
+        assert_eq!(ended.status, 0, "{}", ended.stderr);
+        let scenario = basin.read(&format!("scenarios/{name}.toml")).replace("../demo-data", "demo-data");
+        let few = format!("[realizations]\ncount = {count}\nyears = {years}\n");
+        let scenario = scenario.replacen("[realizations]\n", &few, 1);
+        (basin, scenario)
     }
 
     pub fn path(&self) -> &Path {

@@ -1,16 +1,8 @@
 //! `--json`: one document on standard output from every command, whether it was done or failed.
 
-use super::basin::{Basin, Ended};
+use super::basin::{Basin, Ended, SMALL_FIT};
 use super::help::commands;
 use serde_json::Value;
-
-const SMALL_FIT: &str = r#"
-[fit]
-parameters = ["snow.degree_day_factor_mm_per_c_day.highest", "snow.melt_base_c"]
-starts = 1
-evaluations = 10
-parameter_sets = 2
-"#;
 
 /// The one document on standard output; a second, or anything beside it, is a fault of the parser.
 fn document(ended: &Ended, words: &str) -> Value {
@@ -77,6 +69,10 @@ fn of_what_failed() {
         ("weather scenario.toml", 2, "add --into DIR"),
         ("weather scenario.toml --realization 13 --into made", 2, "realizations 1 to 12"),
         ("check nowhere.toml", 3, "1 fault"),
+        ("check scenario.toml --into there", 2, "check writes nothing: leave --into out"),
+        ("start there --into here", 2, "leave --into out"),
+        ("completions bash --into there", 2, "leave --into out"),
+        ("manual --into there", 2, "leave --into out"),
         ("start taken", 4, "cannot write"),
         ("start", 2, "<FOLDER>"),
         ("completions bash", 2, "leave --json out"),

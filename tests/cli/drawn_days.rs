@@ -12,14 +12,14 @@ swe = { column = "swe_mm", unit = "mm" }
 "#;
 
 /// A basin with a site at 2150 m, in the lower of its bands, of which two dates have a reading.
-fn with_site() -> Basin {
+pub fn with_site() -> Basin {
     let basin = Basin::new();
     basin.write("scenario.toml", &(basin.read("scenario.toml") + SITE));
     basin.write("snow.csv", "date,swe_mm\n2001-03-01,80\n2001-04-01,60\n2003-04-01,70\n");
     basin
 }
 
-fn manifest(basin: &Basin, folder: &str) -> Value {
+pub fn manifest(basin: &Basin, folder: &str) -> Value {
     serde_json::from_str(&basin.read(&format!("{folder}/run.json"))).unwrap()
 }
 

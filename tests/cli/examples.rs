@@ -1,20 +1,13 @@
 //! Every command that a page shows behind a `$` works as it is written.
 #![cfg(unix)]
 
-use super::basin::Basin;
+use super::basin::{Basin, SMALL_FIT};
 use super::help::pages;
 use std::collections::BTreeSet;
 use std::process::Command;
 
 /// The demo's scenarios made small: what is tested is that the lines run.
 const SMALL: &str = "[realizations]\ncount = 4\nyears = 3\n";
-const SMALL_FIT: &str = r#"
-[fit]
-parameters = ["snow.degree_day_factor_mm_per_c_day.highest", "snow.melt_base_c"]
-starts = 1
-evaluations = 10
-parameter_sets = 2
-"#;
 
 /// What stands behind `$` in a text, man's marks taken away.
 fn examples(text: &str) -> Vec<String> {

@@ -50,11 +50,7 @@ fn unescaped(text: &str) -> String {
 
 #[test]
 fn names_stay_text() {
-    let basin = Basin::new();
-    let ended = basin.run("start .");
-    assert_eq!(ended.status, 0, "{}", ended.stderr);
-    let demo = basin.read("scenarios/alder-fork.toml").replace("../demo-data", "demo-data");
-    let demo = demo.replacen("[realizations]\n", "[realizations]\ncount = 6\nyears = 3\n", 1);
+    let (basin, demo) = Basin::of_demo("alder-fork", [6, 3]);
     basin.write("mine.toml", &scenario(&demo));
     let ended = basin.run("study mine.toml --quiet --into out");
     assert_eq!(ended.status, 0, "{}", ended.stderr);

@@ -42,10 +42,7 @@ fn ways(value: &Value, on_the_way: &mut Vec<String>, found: &mut Vec<Vec<String>
 /// In a study that asks for all there is to ask, no interval is without a method and no method without an interval.
 #[test]
 fn every_interval_has_a_method() {
-    let basin = Basin::new();
-    assert_eq!(basin.run("start .").status, 0);
-    let scenario = basin.read("scenarios/alder-fork.toml").replace("../demo-data", "demo-data");
-    let few = scenario.replacen("[realizations]\n", "[realizations]\ncount = 24\nyears = 10\n", 1);
+    let (basin, few) = Basin::of_demo("alder-fork", [24, 10]);
     let small = "\n[findings.surface]\nwarming_c = [0, 2]\nprecipitation_change_pct = [-20, 0, 40]\n\n[findings.rule_panel]\n";
     basin.write("mine.toml", &(few + small));
     let ended = basin.run("study mine.toml --quiet --into out");

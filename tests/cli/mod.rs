@@ -25,6 +25,7 @@ mod identities;
 mod intensity;
 mod interrupt;
 mod keys;
+mod links;
 mod manual;
 mod methods;
 mod normal;

@@ -5,11 +5,7 @@ use serde_json::Value;
 
 /// The demo basin without its own gauge multiplier and with few realizations, and a table of sets.
 fn demo(of_sets: &str, sets: &str) -> Basin {
-    let basin = Basin::new();
-    let ended = basin.run("start .");
-    assert_eq!(ended.status, 0, "{}", ended.stderr);
-    let scenario = basin.read("scenarios/alder-fork.toml").replace("../demo-data", "demo-data");
-    let few = scenario.replacen("[realizations]\n", "[realizations]\ncount = 24\nyears = 8\n", 1);
+    let (basin, few) = Basin::of_demo("alder-fork", [24, 8]);
     basin.write("mine.toml", &(few + of_sets));
     basin.write("sets.csv", sets);
     basin

@@ -1,7 +1,7 @@
 //! `--png`: a picture in pixels beside every figure, with every letter that the figure has.
 
 use super::basin::Basin;
-use serde_json::Value;
+use super::drawn_days::{manifest, with_site};
 use skrifa::{FontRef, MetadataProvider};
 use std::collections::BTreeSet;
 use std::fs;
@@ -9,25 +9,6 @@ use thawline::report::picture_of;
 
 const REGULAR: &[u8] = include_bytes!("../../src/report/fonts/LiberationSans-Regular.ttf");
 const BOLD: &[u8] = include_bytes!("../../src/report/fonts/LiberationSans-Bold.ttf");
-
-const SITE: &str = r#"
-[[observed_swe]]
-name = "Heron Meadow"
-file = "snow.csv"
-elevation_m = 2150
-swe = { column = "swe_mm", unit = "mm" }
-"#;
-
-fn with_site() -> Basin {
-    let basin = Basin::new();
-    basin.append(SITE);
-    basin.write("snow.csv", "date,swe_mm\n2001-03-01,80\n2001-04-01,60\n2003-04-01,70\n");
-    basin
-}
-
-fn manifest(basin: &Basin, folder: &str) -> Value {
-    serde_json::from_str(&basin.read(&format!("{folder}/run.json"))).unwrap()
-}
 
 /// Names in the folder of figures, without their endings, of those that end so.
 fn slugs(basin: &Basin, folder: &str, ending: &str) -> BTreeSet<String> {

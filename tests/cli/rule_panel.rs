@@ -5,11 +5,7 @@ use serde_json::Value;
 
 /// The demo basin with few realizations and these lines more.
 fn demo(more: &str) -> Basin {
-    let basin = Basin::new();
-    let ended = basin.run("start .");
-    assert_eq!(ended.status, 0, "{}", ended.stderr);
-    let scenario = basin.read("scenarios/alder-fork.toml").replace("../demo-data", "demo-data");
-    let few = scenario.replacen("[realizations]\n", "[realizations]\ncount = 10\nyears = 4\n", 1);
+    let (basin, few) = Basin::of_demo("alder-fork", [10, 4]);
     basin.write("mine.toml", &(few + more));
     basin
 }

@@ -5,13 +5,9 @@ use serde_json::Value;
 
 /// The demo with few realizations and nothing asked beside the headline, and more lines at its end.
 fn demo(more: &str) -> Basin {
-    let basin = Basin::new();
-    let ended = basin.run("start .");
-    assert_eq!(ended.status, 0, "{}", ended.stderr);
-    let scenario = basin.read("scenarios/alder-fork.toml").replace("../demo-data", "demo-data");
-    let (scenario, _) = scenario.split_once("# What is asked beside").unwrap();
-    let few = scenario.replacen("[realizations]\n", "[realizations]\ncount = 12\nyears = 6\n", 1);
-    basin.write("mine.toml", &(few + more));
+    let (basin, scenario) = Basin::of_demo("alder-fork", [12, 6]);
+    let (few, _) = scenario.split_once("# What is asked beside").unwrap();
+    basin.write("mine.toml", &format!("{few}{more}"));
     basin
 }
 
@@ -297,10 +293,7 @@ fn a_criterion_on_low_snow_years_goes_by_the_stated_quantile() {
 #[test]
 fn precipitation_makes_up_for_more_warming_where_winters_are_cold() {
     let offset = |name: &str| {
-        let basin = Basin::new();
-        assert_eq!(basin.run("start .").status, 0);
-        let scenario = basin.read(&format!("scenarios/{name}.toml")).replace("../demo-data", "demo-data");
-        let few = scenario.replacen("[realizations]\n", "[realizations]\ncount = 24\nyears = 10\n", 1);
+        let (basin, few) = Basin::of_demo(name, [24, 10]);
         let grid = "\n[findings.surface]\nwarming_c = [0, 1, 2, 3, 4, 5, 6, 8, 10]\nprecipitation_change_pct = [-20, 0, 20, 40]\n";
         basin.write("mine.toml", &(few + grid));
         findings(&basin, "--into out")["surface"]["offset"]["warming"]["level_c"].as_f64().unwrap()

@@ -66,16 +66,10 @@ fn has_words(text: &str, words: &str) -> bool {
 
 #[test]
 fn one_spelling_of_each_term() {
-    let basin = Basin::new();
-    let ended = basin.run("start .");
-    assert_eq!(ended.status, 0, "{}", ended.stderr);
     let mut said = Vec::new();
     for name in ["alder-fork", "frostbell-creek", "tamsin-river"] {
-        let scenario = basin.read(&format!("scenarios/{name}.toml")).replace("../demo-data", "demo-data");
-        basin.write(
-            "mine.toml",
-            &scenario.replacen("[realizations]\n", "[realizations]\ncount = 24\nyears = 6\n", 1),
-        );
+        let (basin, scenario) = Basin::of_demo(name, [24, 6]);
+        basin.write("mine.toml", &scenario);
         let ended = basin.run(&format!("study mine.toml --into {name}"));
         assert_eq!(ended.status, 0, "{}", ended.stderr);
         said.push((format!("{name}, last lines"), ended.stderr.to_lowercase()));
@@ -85,6 +79,7 @@ fn one_spelling_of_each_term() {
             said.push((path.display().to_string(), text_of(&std::fs::read_to_string(&path).unwrap())));
         }
     }
+    let basin = Basin::new();
     for command in ["", "study", "daily", "check", "fit", "weather", "start"] {
         said.push((
             format!("help of {command}"),
