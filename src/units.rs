@@ -168,6 +168,51 @@ impl AreaUnit {
     }
 }
 
+/// Unit of a flow.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
+pub enum FlowUnit {
+    /// Cubic metres per second.
+    #[serde(rename = "m3/s")]
+    CubicMetrePerSecond,
+    /// Cubic international feet per second.
+    #[serde(rename = "cfs")]
+    CubicFootPerSecond,
+    /// Million cubic metres a day.
+    #[serde(rename = "hm3/day")]
+    CubicHectometrePerDay,
+    /// Acre-feet a day.
+    #[serde(rename = "acre-feet/day")]
+    AcreFootPerDay,
+}
+
+impl FlowUnit {
+    /// Every unit by the name a scenario gives it.
+    pub const NAMES: [(&'static str, Self); 4] = [
+        ("m3/s", Self::CubicMetrePerSecond),
+        ("cfs", Self::CubicFootPerSecond),
+        ("hm3/day", Self::CubicHectometrePerDay),
+        ("acre-feet/day", Self::AcreFootPerDay),
+    ];
+
+    /// A flow in this unit, in hm3 a day.
+    ///
+    /// ```
+    /// use thawline::units::{FlowUnit, acre_feet};
+    /// let a_day = FlowUnit::CubicFootPerSecond.to_hm3_a_day(1.0);
+    /// assert!((acre_feet(a_day) - 1.9834710744).abs() < 1e-9);
+    /// ```
+    pub fn to_hm3_a_day(self, value: f64) -> f64 {
+        match self {
+            Self::CubicMetrePerSecond => value * SECONDS_A_DAY / 1e6,
+            Self::CubicFootPerSecond => {
+                value * METRES_PER_FOOT * METRES_PER_FOOT * METRES_PER_FOOT * SECONDS_A_DAY / 1e6
+            }
+            Self::CubicHectometrePerDay => value,
+            Self::AcreFootPerDay => value / acre_feet(1.0),
+        }
+    }
+}
+
 /// Water `depth_mm` deep over `area_km2`, in hm3 (million cubic metres): 1 mm on 1 km2 is 1000 m3.
 ///
 /// ```
@@ -175,6 +220,15 @@ impl AreaUnit {
 /// ```
 pub fn cubic_hectometres(depth_mm: f64, area_km2: f64) -> f64 {
     depth_mm * area_km2 / 1000.0
+}
+
+/// How deep `volume_hm3` of water would stand on `area_km2`, in mm.
+///
+/// ```
+/// assert_eq!(thawline::units::depth_mm(112.5, 250.0), 450.0);
+/// ```
+pub fn depth_mm(volume_hm3: f64, area_km2: f64) -> f64 {
+    1000.0 * volume_hm3 / area_km2
 }
 
 /// A volume of `volume_hm3` in acre-feet, each 43,560 cubic international feet or 1233.4818 m3.
@@ -186,6 +240,7 @@ pub fn acre_feet(volume_hm3: f64) -> f64 {
     volume_hm3 * 1e6 / (SQUARE_METRES_PER_ACRE * METRES_PER_FOOT)
 }
 
+const SECONDS_A_DAY: f64 = 86_400.0;
 const METRES_PER_FOOT: f64 = 0.3048;
 const SQUARE_METRES_PER_ACRE: f64 = 43_560.0 * METRES_PER_FOOT * METRES_PER_FOOT;
 const ACRES_PER_SQUARE_MILE: f64 = 640.0;

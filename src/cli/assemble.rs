@@ -10,10 +10,12 @@ use crate::basin::{Basin, GroundStated};
 use crate::defaults::DefaultInForce;
 use crate::fault::Fault;
 use crate::findings::NamedChange;
+use crate::inflow::ObservedInflow;
 use crate::observed::Observations;
+use crate::operation::{Operation, OperationSettings};
 use crate::scenario::{
-    Document, Draft, FITTED_KEY, Fitted, ObservedTyped, PARAMETER_SETS_KEY, PROJECTIONS_KEY, ParameterSets,
-    read_fitted, read_parameter_sets, read_projections,
+    Document, Draft, FITTED_KEY, Fitted, OBSERVED_INFLOW_KEY, ObservedTyped, PARAMETER_SETS_KEY,
+    PROJECTIONS_KEY, ParameterSets, Scenario, read_fitted, read_parameter_sets, read_projections,
 };
 use crate::snow::{StationPhase, correct_catch};
 use crate::table::Encoding;
@@ -37,12 +39,14 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
     let bands = take(read_bands_of(&draft, &folder), &mut faults).flatten();
     let record = take(read_record_of(&draft, &folder), &mut faults).flatten();
     let observed = read_observed_of(&draft, &folder, &mut faults);
+    let inflow = take(read_observed_inflow_of(&draft, &folder), &mut faults).flatten();
     for (key, name) in &draft.named_files {
         let is_read = match key.as_str() {
             key if key.starts_with("basin.") => draft.hypsometry.is_some(),
             FITTED_KEY => true,
             PARAMETER_SETS_KEY => draft.parameter_sets.is_some(),
             PROJECTIONS_KEY => true,
+            OBSERVED_INFLOW_KEY => draft.observed_inflow.is_some(),
             "weather.file" => draft.record_source.is_some() && draft.season.is_some(),
             of_site => draft.observed.iter().flatten().any(|site| of_site == file_key(site)),
         };
@@ -121,6 +125,9 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             let (projections, projections_file) = projections.unzip();
             files.extend(projections_file);
             named_changes.extend(projections.unwrap_or_default());
+            let (observed_inflow, inflow_file) = inflow.unzip();
+            files.extend(inflow_file);
+            let operation = operation_of(&scenario, basin.area_km2());
             let mut defaults = draft.defaults;
             note_baseline_years(&baseline_years, &mut defaults);
             let mut ready = Ready {
@@ -139,6 +146,8 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 fitted,
                 parameter_sets,
                 named_changes,
+                operation,
+                observed_inflow,
                 files,
                 stem,
             };
@@ -186,6 +195,26 @@ fn read_record_of(draft: &Draft, folder: &Path) -> Result<Option<(Record, InputF
         &typed.limits,
     )?;
     Ok(Some((record, file)))
+}
+
+/// What becomes of the water, where the scenario asks it.
+fn operation_of(scenario: &Scenario, area_km2: f64) -> Option<Operation> {
+    let inflow = scenario.inflow.as_ref()?;
+    let reservoir = scenario.reservoir.as_ref();
+    let settings = OperationSettings {
+        water_year_starts: scenario.season.water_year_starts,
+        volume_windows: scenario.season.volume_windows.clone(),
+        shares_before: scenario.season.outflow_before.clone(),
+        storage_dates: reservoir.map_or_else(Vec::new, |typed| typed.storage_dates.clone()),
+        is_observed: inflow.observed.is_some(),
+    };
+    Some(Operation {
+        settings,
+        area_km2,
+        routing: inflow.routing,
+        reservoir: reservoir.map(|typed| typed.reservoir.clone()),
+        changes: reservoir.map_or_else(Vec::new, |typed| typed.changes.clone()),
+    })
 }
 
 /// Notes the baseline years among the other defaults of `[weather]`, unless they were typed.
@@ -265,6 +294,20 @@ fn read_projections_of(
     let file = read_data(folder, name, PROJECTIONS_KEY, Encoding::Utf8).map_err(|fault| vec![fault])?;
     let projections = read_projections(&file.name, &file.text)?;
     Ok(Some((projections, file)))
+}
+
+/// Reads the file of observed inflow.
+fn read_observed_inflow_of(
+    draft: &Draft,
+    folder: &Path,
+) -> Result<Option<(ObservedInflow, InputFile)>, Vec<Fault>> {
+    let Some(typed) = &draft.observed_inflow else {
+        return Ok(None);
+    };
+    let file = read_data(folder, &typed.file, OBSERVED_INFLOW_KEY, typed.columns.format.encoding)
+        .map_err(|fault| vec![fault])?;
+    let observed = crate::inflow::read(&file.name, &file.text, &typed.columns)?;
+    Ok(Some((observed, file)))
 }
 
 fn file_key(site: &ObservedTyped) -> String {

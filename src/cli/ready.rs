@@ -10,7 +10,9 @@ use crate::ensemble::{BandClimate, WinterMonths, band_climates, snow_that_piles_
 use crate::fault::Unlikely;
 use crate::findings::NamedChange;
 use crate::fit::{Comparison, Model, Parameters, Site, compare};
+use crate::inflow::ObservedInflow;
 use crate::observed::Observations;
+use crate::operation::Operation;
 use crate::perturb::{MonthlyChange, Recipe};
 use crate::report::{FittedFrom, Input, Origin, Reader, SetsFrom};
 use crate::scenario::{Fitted, ParameterSets, Scenario};
@@ -46,6 +48,10 @@ pub(super) struct Ready {
     pub fitted: Option<Fitted>,
     /// Sets of parameters that a study runs beside its own.
     pub parameter_sets: Option<ParameterSets>,
+    /// What becomes of the water, where it is asked.
+    pub operation: Option<Operation>,
+    /// Observed inflow.
+    pub observed_inflow: Option<ObservedInflow>,
     /// Changes of climate that have a name: the scenario's cases, and its file's projections behind them.
     pub named_changes: Vec<NamedChange>,
     /// The scenario, the bands, the weather, the sites, the files of fitted parameters, of sets of them and of projections, as
@@ -81,7 +87,8 @@ impl Ready {
         let sets = self.parameter_sets.iter().map(|_| "parameter_sets");
         let projections = self.scenario.findings.projections_file.iter().map(|_| "projections");
         let roles = ["scenario", "bands", "weather"].into_iter().chain(of_sites).chain(fitted);
-        let roles = roles.chain(sets).chain(projections);
+        let inflow = self.observed_inflow.iter().map(|_| "observed_inflow");
+        let roles = roles.chain(sets).chain(projections).chain(inflow);
         let inputs = roles.zip(&self.files).map(|(role, file)| Input {
             role,
             path: file.name.clone(),

@@ -10,15 +10,17 @@ use super::progress::Progress;
 use super::ready::Ready;
 use super::rule_panel::rule_panel;
 use super::surface::warmed;
-use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, SweBins, Watch, run, run_records};
+use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, Seasons, SweBins, Watch, run, run_records};
 use crate::findings::{
-    ByYear, ByYearQuestions, Findings, OtherChange, ParameterSpread, Questions, REALIZATIONS_OF_A_RECORD,
-    RESAMPLED_RECORDS, RecordOdds, Refit, RefitOdds, Runs, TIMES_ASSUMED, answer, warm_year_biases,
+    ByYear, ByYearQuestions, Findings, Operations, OperationsQuestions, OtherChange, ParameterSpread,
+    Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, RecordOdds, Refit, RefitOdds, Runs,
+    TIMES_ASSUMED, answer, warm_year_biases,
 };
 use crate::perturb::{Generator, MeanChange, TemperatureHeld};
 use crate::season::Measures;
 use crate::snow::{OpenLedger, Path};
 use crate::weather::Series;
+use ndarray::Axis;
 use rayon::prelude::*;
 
 /// Runs every realization under every level; the reference once more with temperatures held, and for every change of
@@ -44,6 +46,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         reference: warming.reference,
         bands: ready.basin.bands.len(),
         measures,
+        operation: ready.operation.as_ref(),
         realizations: realizations.count,
         years: realizations.years,
         path: Path::default(),
@@ -140,6 +143,7 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         .unwrap_or_default();
     let comparisons = ready.comparisons().map_err(open)?;
     let generator = Some(generator_sheet);
+    let operations = operations(ready, &study, &held);
     Ok(Findings {
         surface: Some(surface),
         by_year,
@@ -150,9 +154,27 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
         warm_year_biases,
         comparisons,
         generator,
+        operations,
         places,
         ..findings
     })
+}
+
+/// What becomes of the water, where the scenario asks it.
+fn operations(ready: &Ready, study: &Seasons, held: &Seasons) -> Option<Operations> {
+    let (scenario, operation) = (&ready.scenario, ready.operation.as_ref()?);
+    let limits = scenario.inflow.as_ref().map(|inflow| inflow.year_class_limits_hm3.as_slice());
+    let questions = OperationsQuestions {
+        levels_c: &scenario.warming.levels_c,
+        reference: scenario.warming.reference,
+        area_km2: operation.area_km2,
+        seed: scenario.seed,
+        inflow_is_observed: operation.settings.is_observed,
+        year_class_limits_hm3: limits.unwrap_or_default(),
+        reservoir: operation.reservoir.as_ref().map(|reservoir| reservoir.name.as_str()),
+        headline: (&study.basin.measures[0], study.basin.years.index_axis(Axis(1), 0)),
+    };
+    Some(Operations::of(study.operated.as_ref()?, held.operated.as_ref(), &questions))
 }
 
 /// Watches for the wish to stop alone: runs that are too many and too short to count on a bar.
@@ -172,5 +194,6 @@ pub(super) fn halted(halt: Halt) -> Failure {
     match halt {
         Halt::Stopped => Failure::Interrupted,
         Halt::Ledger(ledger) => open(ledger),
+        Halt::Pool(pool) => Failure::Ours(pool.to_string()),
     }
 }

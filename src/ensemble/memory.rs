@@ -4,7 +4,9 @@
 //! and over. Most years start bare, so most have been run; what comes out of the memory is what would have been computed,
 //! to the bit.
 
+use crate::inflow::WaterYear;
 use crate::snow::Snow;
+use chrono::NaiveDate;
 use std::collections::HashMap;
 use std::collections::hash_map::Entry;
 
@@ -17,8 +19,19 @@ pub(super) struct Remembered {
     pub measured: Vec<f64>,
     /// Bins of the basin means' SWE, `[level][day]`; empty where the days are not counted.
     pub swe_bins: Vec<u32>,
+    /// Water input of the basin means, mm, `[day][level]`; empty where nothing is operated.
+    pub water_input_mm: Vec<f64>,
+    /// First day of the year.
+    pub first: NaiveDate,
     /// Whether a band of the reference kept its snow.
     pub is_perennial: bool,
+}
+
+impl Remembered {
+    /// Its water, for what becomes of it.
+    pub fn water_year(&self) -> WaterYear<'_> {
+        WaterYear { first: self.first, water_input_mm: &self.water_input_mm }
+    }
 }
 
 /// A place in the memory where some snow lies.
@@ -46,7 +59,8 @@ impl Memory {
 
     /// Whether so much is remembered that it is better forgotten: where snow never goes, no year is ever the same.
     pub fn is_full(&self) -> bool {
-        self.years.first().is_some_and(|(year, _)| year.measured.len() * self.years.len() > MOST_NUMBERS)
+        let numbers = |year: &Remembered| year.measured.len() + year.water_input_mm.len();
+        self.years.first().is_some_and(|(year, _)| numbers(year) * self.years.len() > MOST_NUMBERS)
     }
 
     /// Where this snow lies.

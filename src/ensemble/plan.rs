@@ -1,5 +1,6 @@
 //! The plan of a run: what is stepped, by which weather, and what is measured.
 
+use crate::operation::Operation;
 use crate::perturb::Generator;
 use crate::season::{Measures, NONE, keeps_snow};
 use crate::snow::{Lanes, Path, YearBlock};
@@ -31,6 +32,8 @@ pub struct Plan<'a> {
     pub bands: usize,
     /// What is measured.
     pub measures: &'a Measures,
+    /// What becomes of the water, where it is asked.
+    pub operation: Option<&'a Operation>,
     /// How many realizations.
     pub realizations: u32,
     /// Water years of each.
@@ -61,6 +64,22 @@ impl Plan<'_> {
         let lanes = self.groups[group].lanes;
         let keeps = |level: usize| (0..self.bands).any(|band| keeps_snow(block, lanes.column(level, band)));
         self.reference_in(group).is_some_and(keeps)
+    }
+
+    /// Water input of every level of a year, mm, `[day][level]`, where it is asked what becomes of it. The basin means of so many
+    /// levels stand side by side from a column on.
+    pub(super) fn water_input_mm(&self, block: &YearBlock, from: usize, levels: usize) -> Vec<f64> {
+        if self.operation.is_none() {
+            return Vec::new();
+        }
+        let mut water_input_mm = Vec::with_capacity(block.days * levels);
+        for day in 0..block.days {
+            let [outflow, rain] =
+                [&block.outflow_mm, &block.bare_ground_rain_mm].map(|of| &block.row(of, day)[from..]);
+            water_input_mm
+                .extend(outflow.iter().zip(rain).take(levels).map(|(outflow, rain)| outflow + rain));
+        }
+        water_input_mm
     }
 
     /// Every measure of every column of a year, `[measure][column]`.

@@ -6,6 +6,7 @@ use super::plan::Plan;
 use super::swe_days::Tally;
 use super::watch::{Halt, Watch};
 use crate::calendar::day_of_water_year;
+use crate::operation::Operated;
 use crate::perturb::Generator;
 use crate::season::{Kind, NONE, NOT_GONE, period_value};
 
@@ -21,6 +22,8 @@ pub(super) struct Kept {
     pub band_headline: Vec<f64>,
     /// `[level][band][measure]`: years with none, and years whose snow never went.
     pub band_undefined: Vec<[u32; 2]>,
+    /// What became of the water, where it is asked.
+    pub operated: Operated,
 }
 
 /// What is kept of a realization at nodes.
@@ -61,13 +64,29 @@ impl<'p> Workshop<'p> {
             bench.run_years((number, plan.years), generator, first_year, watch, |block, _| Remembered {
                 is_perennial: plan.keeps_snow(group, block),
                 swe_bins: tally.bins(block, levels),
+                water_input_mm: plan.water_input_mm(block, block.mixes_at, levels),
+                first: block.first,
                 measured: plan.measured(block),
             })
         })?;
         for (group, bench) in self.benches.iter().enumerate() {
             tally.count(plan.levels_before(group), bench.years().map(|year| year.swe_bins.as_slice()));
         }
-        Ok(self.keep())
+        let operated = self.operate()?;
+        Ok(Kept { operated, ..self.keep() })
+    }
+
+    /// What becomes of the water of the years that were run last, level by level.
+    fn operate(&self) -> Result<Operated, Halt> {
+        let mut all = Operated::default();
+        let Some(operation) = self.plan.operation else {
+            return Ok(all);
+        };
+        for bench in &self.benches {
+            let years = bench.years().map(Remembered::water_year);
+            all.append(operation.run(&years.collect::<Vec<_>>(), bench.lanes.mixes())?);
+        }
+        Ok(all)
     }
 
     /// Runs the same realization from the generators of each of several records, one a group, and measures the basin means
@@ -96,6 +115,8 @@ impl<'p> Workshop<'p> {
                     Remembered {
                         is_perennial: plan.keeps_snow(group, block),
                         swe_bins: Vec::new(),
+                        water_input_mm: Vec::new(),
+                        first: means.first,
                         measured: plan.measured(means),
                     }
                 })
@@ -121,7 +142,13 @@ impl<'p> Workshop<'p> {
                 let swe_mm = block.row(&block.swe_mm, day_of_water_year(block.first, survey) - 1);
                 let of_node = |node: usize| (0..bands).map(move |band| swe_mm[lanes.column(node, band)]);
                 measured.extend((0..nodes).flat_map(of_node));
-                Remembered { is_perennial: plan.keeps_snow(group, block), swe_bins: Vec::new(), measured }
+                Remembered {
+                    is_perennial: plan.keeps_snow(group, block),
+                    swe_bins: Vec::new(),
+                    water_input_mm: Vec::new(),
+                    first: block.first,
+                    measured,
+                }
             })
         })?;
         let bench = &self.benches[self.of_reference];
@@ -186,6 +213,7 @@ impl<'p> Workshop<'p> {
             band_periods: Vec::with_capacity(levels * bands * measures.len()),
             band_headline: Vec::with_capacity(levels * bands * self.plan.years),
             band_undefined: Vec::with_capacity(levels * bands * measures.len()),
+            operated: Operated::default(),
         };
         let mut one = Vec::with_capacity(self.plan.years);
         for bench in &self.benches {

@@ -1,9 +1,11 @@
 //! What a run keeps: single years for the basin, period values for the bands and single years of their headline measure, counts
 //! for the days.
 
+use super::operated::OperatedSeasons;
 use super::plan::Plan;
 use super::realization::Kept;
 use super::swe_days::SweDays;
+use crate::operation::Operated;
 use crate::season::{Measure, period_value};
 use ndarray::{Array3, Array4, Axis};
 
@@ -20,6 +22,8 @@ pub struct Seasons {
     pub band_headline: Array4<f64>,
     /// SWE of the basin on every day of the water year.
     pub swe_days: SweDays,
+    /// What became of the water, where it is asked.
+    pub operated: Option<OperatedSeasons>,
 }
 
 /// The measured seasons of the basin means.
@@ -73,6 +77,10 @@ impl Seasons {
             band_undefined: Array3::from_elem((levels, bands, count), [0, 0]),
             band_headline: Array4::zeros((levels, bands, kept.len(), plan.years)),
             swe_days,
+            operated: plan.operation.map(|operation| {
+                let kept: Vec<&Operated> = kept.iter().map(|kept| &kept.operated).collect();
+                OperatedSeasons::gather(operation, plan.levels(), &kept)
+            }),
         };
         for (realization, kept) in kept.iter().enumerate() {
             let mut bands = seasons.band_periods.index_axis_mut(Axis(3), realization);

@@ -1,5 +1,6 @@
 //! What a run tells whoever watches it, how it is asked to stop, and why it has no result.
 
+use crate::reservoir::OpenPool;
 use crate::snow::OpenLedger;
 use thiserror::Error;
 
@@ -30,4 +31,7 @@ pub enum Halt {
     /// Water was lost or made: a fault of the engine.
     #[error(transparent)]
     Ledger(#[from] OpenLedger),
+    /// The same of a reservoir.
+    #[error(transparent)]
+    Pool(#[from] OpenPool),
 }

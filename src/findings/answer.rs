@@ -4,6 +4,7 @@ use super::break_even::BreakEven;
 use super::by_year::ByYear;
 use super::generator_sheet::GeneratorSheet;
 use super::measure::{Asked, Found, MeasureFindings};
+use super::operations::Operations;
 use super::parameter_spread::ParameterSpread;
 use super::places::Places;
 use super::record::RecordFindings;
@@ -105,6 +106,9 @@ pub struct Findings {
     pub basin: Vec<MeasureFindings>,
     /// Of each band, from the lowest.
     pub bands: Vec<BandFindings>,
+    /// What becomes of the water. Whoever knows how it is routed adds it.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub operations: Option<Operations>,
     /// Where and in which years the snow is lost. Found beside the runs: whoever has the weather adds it.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub places: Option<Places>,
@@ -182,6 +186,7 @@ pub fn answer(runs: &Runs<'_>, questions: &Questions<'_>, watch: &dyn Watch) -> 
         by_year: None,
         basin,
         bands: bands.collect(),
+        operations: None,
         places: None,
         comparisons: Vec::new(),
         generator: None,

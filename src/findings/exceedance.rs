@@ -3,7 +3,7 @@
 use super::quantile::quantile;
 use super::resample::{Estimate, Ranked, Resamples};
 use crate::season::LEAST_REFERENCE_MM;
-use crate::units::cubic_hectometres;
+use crate::units::{cubic_hectometres, depth_mm};
 use serde::Serialize;
 
 /// The chances at which volumes are told, percent: in 90 of 100 years at least the first comes, in 10 the last.
@@ -22,6 +22,12 @@ pub struct Exceeded {
     pub volume_hm3: Estimate,
     /// Its change from the reference's, percent; nothing where that is below 10 mm, and at the reference.
     pub change_pct: Option<f64>,
+}
+
+/// The same of volumes, hm3, which are as much as a depth over the basin.
+pub(super) fn volumes_exceeded(years: &Ranked, area_km2: f64, resamples: &Resamples) -> Vec<Exceeded> {
+    let depths_mm = years.values().iter().map(|(hm3, realization)| (depth_mm(*hm3, area_km2), *realization));
+    exceeded(&Ranked::new(depths_mm), area_km2, resamples)
 }
 
 /// The amounts that 90, 70, 50, 30 and 10 % of all years of all realizations bring at least, with their Monte Carlo

@@ -4,7 +4,7 @@ use super::chance::Chances;
 use super::crossing::{Crossing, CrossingRange, crossing_range};
 use super::distribution::Distribution;
 use super::driest_and_wettest::DriestAndWettest;
-use super::exceedance::{Exceeded, add_changes, exceeded};
+use super::exceedance::{Exceeded, add_changes, exceeded, volumes_exceeded};
 use super::quantile::{quantile, sorted};
 use super::record_range::{Range, RecordRange, range};
 use super::resample::{Estimate, Ranked, Resamples};
@@ -13,7 +13,7 @@ use super::spread::{SignalToNoise, Spread, signal_to_noise, signal_to_spread};
 use super::temperature_held::TemperatureHeldSpread;
 use super::variance::{TwoWay, VarianceShares};
 use super::yardstick::{LevelShift, Levels, Yardstick};
-use crate::season::Measure;
+use crate::season::{Kind, Measure};
 use ndarray::{ArrayView1, ArrayView2, ArrayView3, Axis};
 use serde::Serialize;
 
@@ -187,8 +187,10 @@ impl Asked<'_> {
             single_years: self
                 .years
                 .map(|(years, _)| Distribution::of(kind, years.index_axis(Axis(0), level).iter().copied())),
-            exceeded: volumes
-                .map_or(Vec::new(), |((_, area_km2), years)| exceeded(&years, area_km2, &resamples.few())),
+            exceeded: volumes.map_or(Vec::new(), |((_, area_km2), years)| match kind {
+                Kind::VolumeHm3 => volumes_exceeded(&years, area_km2, &resamples.few()),
+                _ => exceeded(&years, area_km2, &resamples.few()),
+            }),
             driest_and_wettest: self.years.filter(|_| self.measure.has_extremes_told).and_then(
                 |(years, _)| DriestAndWettest::of(&years.index_axis_move(Axis(0), level), resamples),
             ),

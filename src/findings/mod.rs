@@ -28,6 +28,7 @@ mod measure;
 mod normal;
 mod odds;
 mod offset;
+mod operations;
 mod parameter_spread;
 mod partition;
 mod perennial;
@@ -92,6 +93,10 @@ pub use normal::{
     percent_of_median,
 };
 pub use offset::Offset;
+pub use operations::{
+    ChangedLevel, ChangedMeasure, Operations, OperationsQuestions, Outlook, OutlookLevel, RuleChange,
+    YearClasses, YearClassesLevel,
+};
 pub use parameter_spread::{LevelBySet, MeasureBySet, Mover, OverSets, ParameterSpread, SetRuns, Weighed};
 pub use partition::{AVERAGED_YEARS, HoldsMost, Partition, PartitionedPeriod};
 pub use perennial::PerennialBand;

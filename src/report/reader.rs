@@ -200,6 +200,7 @@ impl Reader {
                 let unit = self.units.depth_days();
                 format!("{} {}", fixed(unit.of(value), 0), unit.word)
             }
+            (Outcome::Value(value), Kind::VolumeHm3) => self.volume(value),
             (Outcome::Value(value), Kind::Share) => {
                 format!("{} %", fixed(100.0 * value, share_decimals(value)))
             }
@@ -217,12 +218,14 @@ impl Reader {
         let unit = |number: f64| match kind {
             Kind::AmountMm => self.units.depth().of(number),
             Kind::AmountMmDays => self.units.depth_days().of(number),
+            Kind::VolumeHm3 => self.units.volume().of(number),
             Kind::Share => 100.0 * number,
             Kind::DayCount | Kind::DayOfWaterYear | Kind::ArrivalDay => number,
         };
         let (decimals, word) = match kind {
             Kind::AmountMm => (self.amount_decimals(change), ""),
             Kind::AmountMmDays => (0, ""),
+            Kind::VolumeHm3 => (VOLUME_DECIMALS.of(self.units.volume().of(change)), ""),
             Kind::Share => (share_decimals(change), " points"),
             Kind::DayCount => (1, " days"),
             Kind::DayOfWaterYear | Kind::ArrivalDay => (0, " d"),

@@ -15,6 +15,7 @@ mod fit;
 mod fitted;
 mod format;
 mod hypsometry;
+mod inflow;
 mod levels;
 mod nearest;
 mod notes;
@@ -24,12 +25,14 @@ mod parameter_sets;
 mod precipitation_change;
 mod realizations;
 mod report;
+mod reservoir;
 mod season;
 mod section;
 mod snow;
 mod snow_options;
 mod temperature_gradient;
 mod texts;
+mod volumes;
 mod warming;
 mod weather;
 
@@ -43,10 +46,12 @@ pub use findings::{
 pub use fit::FitTyped;
 pub use fitted::{FITTED_KEY, Fitted, read_fitted};
 pub use hypsometry::HypsometryTyped;
+pub use inflow::{InflowTyped, OBSERVED_INFLOW_KEY, ObservedInflowTyped};
 pub use observed::ObservedTyped;
 pub use parameter_sets::{PARAMETER_SETS_KEY, ParameterSets, ParameterSetsTyped, read_parameter_sets};
 pub use realizations::RealizationsTyped;
 pub use report::ReportTyped;
+pub use reservoir::ReservoirTyped;
 pub use warming::WarmingTyped;
 pub use weather::{RecordSource, WeatherTyped};
 
@@ -88,6 +93,10 @@ pub struct Scenario {
     pub fit: FitTyped,
     /// What is asked beside the headline.
     pub findings: FindingsTyped,
+    /// How water input becomes inflow, where that is asked.
+    pub inflow: Option<InflowTyped>,
+    /// What it flows into, where that is asked.
+    pub reservoir: Option<ReservoirTyped>,
 }
 
 /// What could be read of a scenario, part by part: a part with a fault is missing, the others can still be used to look
@@ -130,6 +139,12 @@ pub struct Draft {
     pub projections_file: Option<String>,
     /// `[findings]`, a table a question.
     pub findings: Option<FindingsTyped>,
+    /// Observed inflow, also where another key of `[inflow]` has a fault.
+    pub observed_inflow: Option<ObservedInflowTyped>,
+    /// `[inflow]`, where it is typed.
+    pub inflow: Option<Option<InflowTyped>>,
+    /// `[reservoir]`, where it is typed.
+    pub reservoir: Option<Option<ReservoirTyped>>,
     /// Every fault of the text.
     pub faults: Vec<Fault>,
     /// What is allowed but unlikely.
@@ -154,7 +169,17 @@ impl Draft {
             observed: self.observed.iter().cloned().collect::<Option<_>>()?,
             fit: self.fit.clone()?,
             findings: self.findings.clone()?,
+            inflow: typed_or_left_out(&self.inflow)?,
+            reservoir: typed_or_left_out(&self.reservoir)?,
         })
+    }
+}
+
+/// A table that was typed and read, or was left out; none where it has a fault.
+fn typed_or_left_out<T: Clone>(table: &Option<Option<T>>) -> Option<Option<T>> {
+    match table {
+        None => Some(None),
+        Some(typed) => typed.clone().map(Some),
     }
 }
 
@@ -196,6 +221,21 @@ pub fn read(document: &Document<'_>) -> Draft {
         Some(FitTyped::default())
     };
     let (projections_file, findings) = findings::read(top.section("findings"));
+    let (observed_inflow, inflow) = top
+        .has("inflow")
+        .then(|| inflow::read(top.section("inflow")))
+        .map_or((None, None), |(observed, typed)| (observed, Some(typed)));
+    let reservoir = top.has("reservoir").then(|| reservoir::read(top.section("reservoir"), is_southern));
+    top.knows("inflow");
+    top.knows("reservoir");
+    if reservoir.is_some() && inflow.is_none() {
+        top.fault(Fault::key(
+            "reservoir",
+            "a reservoir without [inflow]",
+            "an [inflow] that says how water input becomes inflow",
+            "add a line [inflow], runoff_fraction and recession_days below it",
+        ));
+    }
     top.finish();
     let parts = (
         hypsometry,
@@ -215,6 +255,9 @@ pub fn read(document: &Document<'_>) -> Draft {
     draft.parameter_sets = parameter_sets;
     draft.findings = findings;
     draft.projections_file = projections_file;
+    draft.observed_inflow = observed_inflow;
+    draft.inflow = inflow;
+    draft.reservoir = reservoir;
     document.keep_what_is_certain(&mut draft.faults);
     draft
 }

@@ -6,6 +6,9 @@ use serde::Serialize;
 /// No percentage is given of a reference median below this, mm.
 pub const LEAST_REFERENCE_MM: f64 = 10.0;
 
+/// No percentage is given of a reference median below this, hm3.
+const LEAST_REFERENCE_HM3: f64 = 0.1;
+
 /// What a measure's numbers count.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
 #[serde(rename_all = "snake_case")]
@@ -14,6 +17,8 @@ pub enum Kind {
     AmountMm,
     /// An amount of water times the days it lay, mm days.
     AmountMmDays,
+    /// A volume of water, hm3.
+    VolumeHm3,
     /// A part of something, 1 for all of it; told as percent.
     Share,
     /// A number of days.
@@ -30,12 +35,13 @@ impl Kind {
         matches!(self, Self::DayOfWaterYear | Self::ArrivalDay)
     }
 
-    /// The median at the reference below which no percent change is given: 10 mm, and of amounts times days as much as a
-    /// seasonal cover of 10 mm has. None where there is never a percentage.
+    /// The median at the reference below which no percent change is given: 10 mm, of amounts times days as much as a
+    /// seasonal cover of 10 mm has, of volumes 0.1 hm3. None where there is never a percentage.
     pub fn least_reference(self) -> Option<f64> {
         match self {
             Self::AmountMm => Some(LEAST_REFERENCE_MM),
             Self::AmountMmDays => Some(LEAST_REFERENCE_MM * SEASONAL_COVER_DAYS as f64),
+            Self::VolumeHm3 => Some(LEAST_REFERENCE_HM3),
             Self::Share | Self::DayCount | Self::DayOfWaterYear | Self::ArrivalDay => None,
         }
     }

@@ -44,7 +44,7 @@ impl Measure {
         Self::new(Kind::AmountMm, "swe_04_01_mm", "1 April SWE")
     }
 
-    pub(super) fn new(kind: Kind, name: impl Into<String>, title: impl Into<String>) -> Self {
+    pub(crate) fn new(kind: Kind, name: impl Into<String>, title: impl Into<String>) -> Self {
         Self {
             name: name.into(),
             title: title.into(),
@@ -61,7 +61,7 @@ impl Measure {
     }
 
     /// The same, told as a volume, too.
-    pub(super) fn told_as_volume(self) -> Self {
+    pub(crate) fn told_as_volume(self) -> Self {
         Self { is_volume: true, ..self }
     }
 

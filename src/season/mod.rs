@@ -198,6 +198,6 @@ impl Measures {
 }
 
 /// A day of the year within a measure's name: `04_01`.
-fn name_of(day: MonthDay) -> String {
+pub(crate) fn name_of(day: MonthDay) -> String {
     day.to_string().replace('-', "_")
 }

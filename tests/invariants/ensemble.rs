@@ -60,7 +60,16 @@ impl Study {
         (realizations, years): (u32, usize),
         path: Path,
     ) -> Plan<'a> {
-        Plan { groups, reference: 0, bands: self.bands, measures: &self.measures, realizations, years, path }
+        Plan {
+            groups,
+            reference: 0,
+            bands: self.bands,
+            measures: &self.measures,
+            operation: None,
+            realizations,
+            years,
+            path,
+        }
     }
 
     fn run(&self, threads: usize, realizations: u32, path: Path) -> Seasons {

@@ -89,6 +89,7 @@ fn drawn_weather_is_the_same_under_every_rule() {
         reference: ready.scenario.warming.reference,
         bands: ready.basin.bands.len(),
         measures: &measures,
+        operation: None,
         realizations: ready.scenario.realizations.count,
         years: ready.scenario.realizations.years,
         path: crate::snow::Path::default(),

@@ -125,6 +125,7 @@ impl Study<'_> {
                 in_band(l, b, 0, r)
             }),
             band_undefined: Array3::from_elem((levels, bands_count, measures_count), [0, 0]),
+            operated: None,
             swe_days: self.swe_days(),
         };
         let bands: Vec<Band> = (0..bands_count)

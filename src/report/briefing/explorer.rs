@@ -189,6 +189,7 @@ fn measure_row(
     let (kind, unit, decimals, factor) = match measure.kind {
         // 1 mm over 1 km2 is 0.001 hm3.
         Kind::AmountMm if measure.is_volume => ("amount", volume.word, VOLUME_DECIMALS, volume.of(to_hm3)),
+        Kind::VolumeHm3 => ("amount", volume.word, VOLUME_DECIMALS, volume.of(1.0)),
         Kind::AmountMm => ("amount", depth.word, reader.depth_decimals(), depth.of(1.0)),
         Kind::DayOfWaterYear | Kind::ArrivalDay => ("date", "days", WHOLE, 1.0),
         Kind::DayCount => ("days", "days", WHOLE, 1.0),

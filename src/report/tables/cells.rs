@@ -11,6 +11,7 @@ pub(super) fn name(measure: &Measure, units: UnitSystem) -> String {
     let (metric, suffix) = match measure.kind {
         Kind::AmountMm => (UnitSystem::Metric.depth().suffix, units.depth().suffix),
         Kind::AmountMmDays => (UnitSystem::Metric.depth_days().suffix, units.depth_days().suffix),
+        Kind::VolumeHm3 => (UnitSystem::Metric.volume().suffix, units.volume().suffix),
         Kind::Share | Kind::DayCount | Kind::DayOfWaterYear | Kind::ArrivalDay => {
             return measure.name.clone();
         }
@@ -25,6 +26,7 @@ pub(super) fn unit_names(kind: Kind, units: UnitSystem) -> [&'static str; 2] {
     match kind {
         Kind::AmountMm => [units.depth().suffix; 2],
         Kind::AmountMmDays => [units.depth_days().suffix; 2],
+        Kind::VolumeHm3 => [units.volume().suffix; 2],
         Kind::Share => ["share"; 2],
         Kind::DayCount => ["days"; 2],
         Kind::DayOfWaterYear | Kind::ArrivalDay => ["day_of_water_year", "days"],
@@ -44,6 +46,7 @@ impl Told {
         match self.kind {
             Kind::AmountMm => self.units.depth().of(value),
             Kind::AmountMmDays => self.units.depth_days().of(value),
+            Kind::VolumeHm3 => self.units.volume().of(value),
             Kind::Share | Kind::DayCount | Kind::DayOfWaterYear | Kind::ArrivalDay => value,
         }
     }

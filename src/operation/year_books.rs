@@ -1,0 +1,163 @@
+//! What a year of storage comes to.
+
+use super::plan::OperationSettings;
+use crate::reservoir::{Day, Outcome, PoolLedger};
+use crate::season::{Kind, Measure, NOT_REACHED, name_of};
+
+/// Water that is less is none, hm3: a cubic metre.
+pub(super) const LEAST_HM3: f64 = 1e-6;
+
+/// A reservoir's books of one water year, hm3 and days.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(super) struct YearBooks {
+    pub ledger: PoolLedger,
+    pub from_hm3: f64,
+    pub storage_hm3: f64,
+    pub lowest_hm3: f64,
+    pub fill_day: f64,
+    pub demanded_hm3: f64,
+    pub shortage_hm3: f64,
+    pub short_days: f64,
+    pub missed_minimum_days: f64,
+    pub released_hm3: f64,
+    pub flood_hm3: f64,
+    pub spill_hm3: f64,
+    pub encroached_days: f64,
+    pub encroached_most_hm3: f64,
+    pub evaporated_hm3: f64,
+}
+
+/// A measure of the books.
+struct Entry {
+    kind: Kind,
+    name: &'static str,
+    title: &'static str,
+    of: fn(&YearBooks) -> f64,
+}
+
+const ENTRIES: [Entry; 12] = [
+    Entry {
+        kind: Kind::VolumeHm3,
+        name: "storage_year_end_hm3",
+        title: "storage as the water year ends",
+        of: |books| books.storage_hm3,
+    },
+    Entry {
+        kind: Kind::VolumeHm3,
+        name: "storage_lowest_hm3",
+        title: "lowest storage",
+        of: |books| books.lowest_hm3,
+    },
+    Entry {
+        kind: Kind::ArrivalDay,
+        name: "fill_day",
+        title: "day on which the reservoir is full",
+        of: |books| books.fill_day,
+    },
+    Entry { kind: Kind::VolumeHm3, name: "shortage_hm3", title: "shortage", of: |books| books.shortage_hm3 },
+    Entry {
+        kind: Kind::DayCount,
+        name: "shortage_days",
+        title: "days of shortage",
+        of: |books| books.short_days,
+    },
+    Entry { kind: Kind::VolumeHm3, name: "spill_hm3", title: "spill", of: |books| books.spill_hm3 },
+    Entry {
+        kind: Kind::VolumeHm3,
+        name: "release_hm3",
+        title: "release through the outlets",
+        of: |books| books.released_hm3,
+    },
+    Entry {
+        kind: Kind::VolumeHm3,
+        name: "release_for_flood_space_hm3",
+        title: "release for flood space",
+        of: |books| books.flood_hm3,
+    },
+    Entry {
+        kind: Kind::DayCount,
+        name: "flood_space_encroached_days",
+        title: "days above the flood-space rule",
+        of: |books| books.encroached_days,
+    },
+    Entry {
+        kind: Kind::VolumeHm3,
+        name: "flood_space_encroached_most_hm3",
+        title: "most storage above the flood-space rule",
+        of: |books| books.encroached_most_hm3,
+    },
+    Entry {
+        kind: Kind::DayCount,
+        name: "minimum_release_missed_days",
+        title: "days below the minimum release",
+        of: |books| books.missed_minimum_days,
+    },
+    Entry {
+        kind: Kind::VolumeHm3,
+        name: "evaporation_hm3",
+        title: "evaporation",
+        of: |books| books.evaporated_hm3,
+    },
+];
+
+/// The measures: storage on its dates, then the books'.
+pub(super) fn list(settings: &OperationSettings) -> Vec<Measure> {
+    let on_dates = settings.all_storage_dates().into_iter().map(|day| {
+        let name = format!("storage_{}_hm3", name_of(day));
+        Measure::new(Kind::VolumeHm3, name, format!("storage on {}", day.words()))
+    });
+    on_dates.chain(ENTRIES.iter().map(|of| Measure::new(of.kind, of.name, of.title))).collect()
+}
+
+impl YearBooks {
+    /// Opened on some storage.
+    pub fn open(storage_hm3: f64) -> Self {
+        Self {
+            ledger: PoolLedger::default(),
+            from_hm3: storage_hm3,
+            storage_hm3,
+            lowest_hm3: storage_hm3,
+            fill_day: NOT_REACHED,
+            demanded_hm3: 0.0,
+            shortage_hm3: 0.0,
+            short_days: 0.0,
+            missed_minimum_days: 0.0,
+            released_hm3: 0.0,
+            flood_hm3: 0.0,
+            spill_hm3: 0.0,
+            encroached_days: 0.0,
+            encroached_most_hm3: 0.0,
+            evaporated_hm3: 0.0,
+        }
+    }
+
+    /// Enters a day, the `number`th of the year; full is what holds at least `full_hm3` as it ends.
+    #[inline(always)]
+    pub fn enter(&mut self, number: f64, day: &Day, out: &Outcome, full_hm3: f64) {
+        self.ledger.enter(day.inflow_hm3, out);
+        self.storage_hm3 = out.storage_hm3;
+        self.lowest_hm3 = self.lowest_hm3.min(out.storage_hm3);
+        self.fill_day = if out.storage_hm3 >= full_hm3 { self.fill_day.min(number) } else { self.fill_day };
+        self.demanded_hm3 += day.demand_hm3;
+        self.shortage_hm3 += out.shortage_hm3;
+        self.short_days += counted(out.shortage_hm3 > LEAST_HM3);
+        self.missed_minimum_days += counted(day.minimum_hm3 - out.minimum_hm3 > LEAST_HM3);
+        self.released_hm3 += out.minimum_hm3 + out.flood_hm3 + out.for_demand_hm3;
+        self.flood_hm3 += out.flood_hm3;
+        self.spill_hm3 += out.spill_hm3;
+        let above_hm3 = out.storage_hm3 - day.not_above_hm3;
+        self.encroached_days += counted(above_hm3 > LEAST_HM3);
+        self.encroached_most_hm3 = self.encroached_most_hm3.max(above_hm3);
+        self.evaporated_hm3 += out.evaporated_hm3;
+    }
+
+    /// The measures behind storage on its dates.
+    pub fn measures(&self) -> impl Iterator<Item = f64> + '_ {
+        ENTRIES.iter().map(|entry| (entry.of)(self))
+    }
+}
+
+#[inline(always)]
+fn counted(is_so: bool) -> f64 {
+    if is_so { 1.0 } else { 0.0 }
+}

@@ -1,0 +1,160 @@
+//! What is stated of a reservoir, and whether it can be.
+
+use super::day::Pool;
+use super::rule::{FloodRule, RulePoint};
+use crate::fault::{Fault, within};
+use serde::Serialize;
+
+/// What is asked of a reservoir, a month each, January first, hm3 a day.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+#[serde(rename_all = "snake_case")]
+pub enum Demand {
+    /// Water that is taken from it on top of the minimum release.
+    OnTop([f64; 12]),
+    /// A release in all, which the minimum release serves, too.
+    InAll([f64; 12]),
+}
+
+impl Demand {
+    /// Of a day in each month, hm3.
+    pub fn daily_hm3(&self) -> &[f64; 12] {
+        let (Self::OnTop(daily) | Self::InAll(daily)) = self;
+        daily
+    }
+}
+
+/// A reservoir.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct Reservoir {
+    /// Its name.
+    pub name: String,
+    /// The most that it holds, hm3.
+    pub capacity_hm3: f64,
+    /// What lies below its outlets, hm3.
+    pub dead_hm3: f64,
+    /// What it holds as a realization begins, hm3.
+    pub starting_hm3: f64,
+    /// The most that its outlets pass in a day, hm3.
+    pub release_capacity_hm3_per_day: f64,
+    /// Minimum release, a month each, January first, hm3 a day.
+    pub minimum_release_hm3_per_day: [f64; 12],
+    /// Demand, hm3 a day.
+    pub demand_hm3_per_day: Demand,
+    /// Storage that is not to be exceeded, by date; none where it may always be full.
+    pub flood_rule: Vec<RulePoint>,
+    /// What the air takes, a month each, January first, hm3 a day.
+    pub evaporation_hm3_per_day: [f64; 12],
+    /// It counts as full from this share of its capacity on.
+    pub full_share: f64,
+}
+
+/// Larger than the largest there is, hm3.
+const LARGEST_HM3: f64 = 1e6;
+
+impl Reservoir {
+    /// Everything that is wrong with it.
+    ///
+    /// # Errors
+    /// Volumes that cannot be, one fault each.
+    pub fn check(&self) -> Result<(), Vec<Fault>> {
+        let mut faults = Vec::new();
+        let capacity = self.capacity_hm3;
+        if !(capacity > 0.0 && capacity <= LARGEST_HM3) {
+            faults.push(Fault::key(
+                "reservoir.capacity_hm3",
+                capacity,
+                format!("a volume above 0, at most {LARGEST_HM3} hm3"),
+                "million cubic metres; a thousand acre-feet are 1.23348 hm3",
+            ));
+            return Err(faults);
+        }
+        let below = |faults: &mut Vec<Fault>, key: &str, value: f64, from: f64, mend: &str| {
+            within(faults, key, value, from..=capacity, "hm3, the capacity", mend);
+        };
+        below(&mut faults, "reservoir.dead_storage_hm3", self.dead_hm3, 0.0, "what lies below the outlets");
+        if self.dead_hm3 >= capacity {
+            faults.push(Fault::key(
+                "reservoir.dead_storage_hm3",
+                self.dead_hm3,
+                "less than the capacity",
+                "a reservoir without water above its outlets can release none",
+            ));
+        }
+        below(
+            &mut faults,
+            "reservoir.starting_storage_hm3",
+            self.starting_hm3,
+            0.0,
+            "what a realization begins with",
+        );
+        for (at, point) in self.flood_rule.iter().enumerate() {
+            let key = format!("reservoir.storage_not_above_hm3[{at}]");
+            below(
+                &mut faults,
+                &key,
+                point.not_above_hm3,
+                self.dead_hm3,
+                "a volume between dead storage and capacity",
+            );
+            if self.flood_rule[..at].iter().any(|other| other.on == point.on) {
+                faults.push(Fault::key(
+                    key,
+                    format!("{} twice", point.on.words()),
+                    "each day once",
+                    "take one of them out",
+                ));
+            }
+        }
+        if self.release_capacity_hm3_per_day <= 0.0 || !self.release_capacity_hm3_per_day.is_finite() {
+            faults.push(Fault::key(
+                "reservoir.release_capacity",
+                self.release_capacity_hm3_per_day,
+                "more than 0",
+                "what all outlets and turbines pass together",
+            ));
+        }
+        let monthly = [
+            ("reservoir.minimum_release", &self.minimum_release_hm3_per_day),
+            ("reservoir.demand", self.demand_hm3_per_day.daily_hm3()),
+            ("reservoir.evaporation", &self.evaporation_hm3_per_day),
+        ];
+        for (key, daily_hm3) in monthly {
+            if let Some(wrong) = daily_hm3.iter().find(|hm3| !(hm3.is_finite() && **hm3 >= 0.0)) {
+                faults.push(Fault::key(key, wrong, "0 or more in every month", "0 where there is none"));
+            }
+        }
+        let minimum = self.minimum_release_hm3_per_day.iter().copied().fold(0.0, f64::max);
+        if minimum > self.release_capacity_hm3_per_day && faults.is_empty() {
+            faults.push(Fault::key(
+                "reservoir.minimum_release",
+                format!("{minimum} hm3 a day"),
+                format!("at most what the outlets pass, {} hm3 a day", self.release_capacity_hm3_per_day),
+                "correct one of the two; mind their units",
+            ));
+        }
+        within(&mut faults, "reservoir.full_share", self.full_share, 0.5..=1.0, "", "of the capacity");
+        if faults.is_empty() { Ok(()) } else { Err(faults) }
+    }
+
+    /// What does not change from day to day.
+    pub fn pool(&self) -> Pool {
+        Pool {
+            capacity_hm3: self.capacity_hm3,
+            dead_hm3: self.dead_hm3,
+            release_capacity_hm3: self.release_capacity_hm3_per_day,
+            minimum_serves: match self.demand_hm3_per_day {
+                Demand::OnTop(_) => 0.0,
+                Demand::InAll(_) => 1.0,
+            },
+        }
+    }
+
+    /// Its flood rule, day by day.
+    pub fn rule(&self) -> FloodRule {
+        if self.flood_rule.is_empty() {
+            FloodRule::none(self.capacity_hm3)
+        } else {
+            FloodRule::through(&self.flood_rule)
+        }
+    }
+}

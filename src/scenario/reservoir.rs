@@ -1,0 +1,298 @@
+//! `[reservoir]`: what it holds, what it must give, and what could be changed.
+
+use super::section::Section;
+use super::volumes::Stated;
+use crate::calendar::MonthDay;
+use crate::fault::{Fault, Place};
+use crate::operation::Change;
+use crate::reservoir::{Demand, Reservoir, RulePoint};
+
+/// A reservoir, as typed.
+#[derive(Debug, Clone)]
+pub struct ReservoirTyped {
+    /// The reservoir.
+    pub reservoir: Reservoir,
+    /// Days whose storage is told beside the first of every month.
+    pub storage_dates: Vec<MonthDay>,
+    /// What else is tried of its rules.
+    pub changes: Vec<Change>,
+}
+
+const CAPACITY: [&str; 2] = ["capacity_hm3", "capacity_thousand_acre_feet"];
+const DEAD: [&str; 2] = ["dead_storage_hm3", "dead_storage_thousand_acre_feet"];
+const STARTING: [&str; 2] = ["starting_storage_hm3", "starting_storage_thousand_acre_feet"];
+const NOT_ABOVE: [&str; 2] = ["storage_not_above_hm3", "storage_not_above_thousand_acre_feet"];
+const RELEASE_CAPACITY: [&str; 3] =
+    ["release_capacity_m3_per_s", "release_capacity_cfs", "release_capacity_hm3_per_day"];
+const MINIMUM: [&str; 3] = ["minimum_release_m3_per_s", "minimum_release_cfs", "minimum_release_hm3_per_day"];
+const DEMAND: [&str; 4] =
+    ["demand_hm3_per_month", "demand_thousand_acre_feet_per_month", "demand_m3_per_s", "demand_cfs"];
+const TARGET: [&str; 4] = [
+    "release_target_hm3_per_month",
+    "release_target_thousand_acre_feet_per_month",
+    "release_target_m3_per_s",
+    "release_target_cfs",
+];
+const EVAPORATION: [&str; 2] = ["evaporation_hm3_per_month", "evaporation_thousand_acre_feet_per_month"];
+
+/// A reservoir counts as full from this share of its capacity on, where nothing else is stated.
+const FULL_SHARE: f64 = 0.99;
+/// Refill dates that are tried, days, where nothing else is stated.
+const REFILL_MOVED_DAYS: [i32; 3] = [-30, -20, -10];
+
+pub(super) fn read(mut section: Section<'_>, is_southern: bool) -> Option<ReservoirTyped> {
+    let typed = read_keys(&mut section, is_southern);
+    section.finish();
+    typed
+}
+
+fn read_keys(section: &mut Section<'_>, is_southern: bool) -> Option<ReservoirTyped> {
+    let name = read_name(section);
+    let capacity = required_volume(section, CAPACITY, "what it holds when full");
+    let dead = volume_or(section, DEAD, 0.0);
+    let starting = required_volume(section, STARTING, "what each realization begins with");
+    let release_capacity = required_flow(section, &RELEASE_CAPACITY, "what its outlets pass together");
+    let minimum = flow_or_none(section, &MINIMUM);
+    let demand = read_demand(section);
+    let evaporation = flow_or_none(section, &EVAPORATION);
+    let rule = read_rule(section.sections("flood_space"));
+    let full_share = section.number_or("full_share", FULL_SHARE, 0.5..=1.0, "of the capacity");
+    let storage_dates = read_dates(section, is_southern);
+    let has_rule = rule.as_ref().is_some_and(|rule| !rule.is_empty());
+    let changes = section.has("changes").then(|| read_changes(section.section("changes"), has_rule));
+    section.knows("changes");
+    let typed = [&capacity, &dead, &starting].map(|stated| stated.as_ref().map(|stated| stated.key));
+    let flows = [&minimum, &evaporation].map(|stated| stated.as_ref().map(|stated| stated.key));
+    let (capacity, starting, release_capacity) = (capacity?, starting?, release_capacity?);
+    let (demand_key, demand) = demand?;
+    let reservoir = Reservoir {
+        name: name?,
+        capacity_hm3: capacity.value,
+        dead_hm3: dead?.value,
+        starting_hm3: starting.value,
+        // An outlet passes as much in every month.
+        release_capacity_hm3_per_day: release_capacity.value[0],
+        minimum_release_hm3_per_day: minimum?.value,
+        demand_hm3_per_day: demand,
+        flood_rule: rule?,
+        evaporation_hm3_per_day: evaporation?.value,
+        full_share,
+    };
+    if let Err(faults) = reservoir.check() {
+        let keys = [
+            ("reservoir.capacity_hm3", typed[0]),
+            ("reservoir.dead_storage_hm3", typed[1]),
+            ("reservoir.starting_storage_hm3", typed[2]),
+            ("reservoir.release_capacity", Some(release_capacity.key)),
+            ("reservoir.minimum_release", flows[0]),
+            ("reservoir.demand", demand_key),
+            ("reservoir.evaporation", flows[1]),
+        ];
+        note_under_typed_keys(section, faults, &keys);
+        return None;
+    }
+    let changes = match changes {
+        None => Vec::new(),
+        Some(changes) => changes?,
+    };
+    Some(ReservoirTyped { reservoir, storage_dates: storage_dates?, changes })
+}
+
+/// Notes the faults of a reservoir under the keys that were typed.
+fn note_under_typed_keys(section: &Section<'_>, faults: Vec<Fault>, keys: &[(&str, Option<&'static str>)]) {
+    for mut fault in faults {
+        if let Place::Key(key) = &mut fault.place
+            && let Some((_, Some(typed))) = keys.iter().find(|(of, _)| of == key)
+        {
+            *key = section.path_of(typed);
+        }
+        section.fault(fault);
+    }
+}
+
+fn read_name(section: &mut Section<'_>) -> Option<String> {
+    const LONGEST: usize = 300;
+    let name =
+        section.required_text("name", "a name for the reservoir", "add name = \"Lantern Reservoir\"")?;
+    if name.chars().any(char::is_control) || name.chars().count() > LONGEST {
+        section.fault(Fault::key(
+            section.path_of("name"),
+            "a name with line breaks or control signs, or a very long one",
+            format!("one line of at most {LONGEST} characters"),
+            "shorten it",
+        ));
+        return None;
+    }
+    Some(name)
+}
+
+fn required_volume(section: &mut Section<'_>, keys: [&'static str; 2], what: &str) -> Option<Stated<f64>> {
+    if !keys.iter().any(|key| section.has(key)) {
+        keys.iter().for_each(|key| section.knows(key));
+        section.missing(keys[0], "a volume", &format!("add it, {what}; or {}", keys[1]));
+        return None;
+    }
+    section.volume(keys)
+}
+
+fn volume_or(section: &mut Section<'_>, keys: [&'static str; 2], usual: f64) -> Option<Stated<f64>> {
+    if !keys.iter().any(|key| section.has(key)) {
+        keys.iter().for_each(|key| section.knows(key));
+        section.default(keys[0], usual);
+        return Some(Stated { key: keys[0], value: usual });
+    }
+    section.volume(keys)
+}
+
+fn required_flow(section: &mut Section<'_>, keys: &[&'static str], what: &str) -> Option<Stated<[f64; 12]>> {
+    if !keys.iter().any(|key| section.has(key)) {
+        keys.iter().for_each(|key| section.knows(key));
+        section.missing(keys[0], "a flow", &format!("add it, {what}; or {}", keys[1..].join(", ")));
+        return None;
+    }
+    let flow = section.flow(keys)?;
+    if flow.value.iter().any(|value| *value != flow.value[0]) {
+        section.fault(Fault::key(
+            section.path_of(flow.key),
+            "twelve numbers",
+            "one number",
+            "outlets pass as much in every month",
+        ));
+        return None;
+    }
+    Some(flow)
+}
+
+fn flow_or_none(section: &mut Section<'_>, keys: &[&'static str]) -> Option<Stated<[f64; 12]>> {
+    if !keys.iter().any(|key| section.has(key)) {
+        keys.iter().for_each(|key| section.knows(key));
+        section.default(keys[0], 0);
+        return Some(Stated { key: keys[0], value: [0.0; 12] });
+    }
+    section.flow(keys)
+}
+
+/// A demand on top of the minimum release, or a target that it serves, with the key that was typed; no demand where neither was.
+fn read_demand(section: &mut Section<'_>) -> Option<(Option<&'static str>, Demand)> {
+    let typed = |keys: [&'static str; 4]| keys.into_iter().find(|key| section.has(key));
+    match (typed(DEMAND), typed(TARGET)) {
+        (Some(demand), Some(target)) => {
+            DEMAND.iter().chain(&TARGET).for_each(|key| section.knows(key));
+            section.fault(Fault::key(
+                section.path_of(target),
+                format!("{target} beside {demand}"),
+                "one of the two",
+                "a demand comes on top of the minimum release, a release target holds it",
+            ));
+            None
+        }
+        (None, Some(_)) => {
+            DEMAND.iter().for_each(|key| section.knows(key));
+            section.flow(&TARGET).map(|stated| (Some(stated.key), Demand::InAll(stated.value)))
+        }
+        (Some(_), None) => {
+            TARGET.iter().for_each(|key| section.knows(key));
+            section.flow(&DEMAND).map(|stated| (Some(stated.key), Demand::OnTop(stated.value)))
+        }
+        (None, None) => {
+            DEMAND.iter().chain(&TARGET).for_each(|key| section.knows(key));
+            section.default(DEMAND[0], 0);
+            Some((None, Demand::OnTop([0.0; 12])))
+        }
+    }
+}
+
+fn read_rule(sections: Vec<Section<'_>>) -> Option<Vec<RulePoint>> {
+    let points: Vec<Option<RulePoint>> = sections.into_iter().map(read_point).collect();
+    points.into_iter().collect()
+}
+
+fn read_point(mut section: Section<'_>) -> Option<RulePoint> {
+    let on = section.day("on");
+    if on.is_none() && !section.has("on") {
+        section.missing("on", "a day", "add on = \"11-15\"");
+    }
+    let not_above = required_volume(&mut section, NOT_ABOVE, "what storage is not to exceed on that day");
+    section.finish();
+    Some(RulePoint { on: on?, not_above_hm3: not_above?.value })
+}
+
+fn read_dates(section: &mut Section<'_>, is_southern: bool) -> Option<Vec<MonthDay>> {
+    const KEY: &str = "storage_dates";
+    let usual = if is_southern { ["10-01", "01-01"] } else { ["04-01", "07-01"] };
+    let Some(texts) = section.texts(KEY) else {
+        if section.has(KEY) {
+            return None;
+        }
+        section.default(KEY, format!("{usual:?}"));
+        return Some(usual.into_iter().filter_map(MonthDay::parse).collect());
+    };
+    let days: Vec<Option<MonthDay>> =
+        texts.iter().enumerate().map(|(at, text)| section.parse_day(&format!("{KEY}[{at}]"), text)).collect();
+    days.into_iter().collect()
+}
+
+fn read_changes(mut section: Section<'_>, has_rule: bool) -> Option<Vec<Change>> {
+    let changes = read_lists(&mut section, has_rule);
+    section.finish();
+    changes
+}
+
+fn read_lists(section: &mut Section<'_>, has_rule: bool) -> Option<Vec<Change>> {
+    let moved = if section.has("refill_moved_days") {
+        section.numbers("refill_moved_days")
+    } else {
+        section.knows("refill_moved_days");
+        let usual: &[i32] = if has_rule { &REFILL_MOVED_DAYS } else { &[] };
+        section.default("refill_moved_days", format!("{usual:?}"));
+        Some(usual.iter().map(|days| f64::from(*days)).collect())
+    };
+    let mut factors = |key: &'static str| {
+        if section.has(key) {
+            section.numbers(key)
+        } else {
+            section.knows(key);
+            section.default(key, "[]");
+            Some(Vec::new())
+        }
+    };
+    let (space, demand) = (factors("flood_space_times"), factors("demand_times"));
+    let (moved, space, demand) = (moved?, space?, demand?);
+    let is_sound = |key: &str, values: &[f64], is_in: &dyn Fn(f64) -> bool, expected: &str| {
+        let wrong =
+            values.iter().enumerate().find(|(at, value)| !is_in(**value) || values[..*at].contains(value));
+        if let Some((at, value)) = wrong {
+            section.fault(Fault::key(
+                section.path_of(&format!("{key}[{at}]")),
+                value,
+                format!("{expected}, each once, and not what the rules are without it"),
+                "take it out, or write another",
+            ));
+        }
+        wrong.is_none()
+    };
+    let days_are = is_sound(
+        "refill_moved_days",
+        &moved,
+        &|days| days != 0.0 && days.fract() == 0.0 && days.abs() <= 180.0,
+        "whole days from -180 to 180",
+    );
+    let times = |factor: f64| factor != 1.0 && (0.0..=3.0).contains(&factor);
+    let space_is = is_sound("flood_space_times", &space, &times, "factors from 0 to 3");
+    let demand_is = is_sound("demand_times", &demand, &times, "factors from 0 to 3");
+    let asks_of_rule = !moved.is_empty() || !space.is_empty();
+    let needs_rule = asks_of_rule && !has_rule;
+    if needs_rule {
+        section.fault(Fault::key(
+            section.path().to_owned(),
+            "changes of a flood-space rule that is not stated",
+            "a [[reservoir.flood_space]]",
+            "state the rule, or leave refill_moved_days and flood_space_times out",
+        ));
+    }
+    let all_are = days_are && space_is && demand_is && !needs_rule;
+    let moved = moved.into_iter().map(|days| Change::RefillMovedDays(days as i32));
+    let space = space.into_iter().map(Change::FloodSpaceTimes);
+    let demand = demand.into_iter().map(Change::DemandTimes);
+    all_are.then(|| moved.chain(space).chain(demand).collect())
+}
