@@ -44,6 +44,7 @@ pub fn print_share() {
         reference: 0,
         bands: BANDS,
         measures: &measures,
+        operation: None,
         realizations: REALIZATIONS,
         years: YEARS,
         path: Path::default(),
