@@ -51,7 +51,11 @@ pub(super) fn run(path: &Path, open: bool, pictures: Pictures, shared: &Shared) 
     may_be_replaced(&target, "study", shared)?;
     let scenario = &ready.scenario;
     let measures = ready.measures();
-    check_size(&ready, measures.list().len(), shared)?;
+    check_size(
+        &ready,
+        measures.list().len() + ready.operation.as_ref().map_or(0, |of| of.measures().len()),
+        shared,
+    )?;
     if !shared.quiet {
         output::complain(&crate::scenario::unlikely_lines(&ready.unlikely));
     }

@@ -6,6 +6,7 @@ use super::ready::Ready;
 use super::wetness::Wetness;
 use crate::ensemble::{Halt, LevelGroup, Plan, Watch, run_nodes};
 use crate::findings::{BreakEven, Change, Nodes, ResponseSurface, Root, SurfaceQuestions};
+use crate::operation::Operation;
 use crate::perturb::{Generator, Kept, MeanChange, MonthlyChange};
 use crate::season::Measures;
 
@@ -105,13 +106,23 @@ fn run(
 ) -> Result<Nodes, Halt> {
     let measures =
         Measures::of_snow_water_and_timing(plan.measures.settings().clone(), ready.basin.area_km2());
+    let operation = plan.operation.map(Operation::as_stated);
     let classes = ready.scenario.snow.options.patchiness.map_or(1, |patchiness| patchiness.classes);
     let nodes_of_a_run = (MOST_LANES / (plan.bands * classes)).max(8);
     let with_reference = |nodes: &[Change]| {
         let of_nodes = changes[..1].iter().chain(nodes);
         let lanes = ready.lanes(&of_nodes.map(|node| change(ready, node)).collect::<Vec<_>>());
         let groups = [LevelGroup { lanes: &lanes, generator }];
-        run_nodes(&Plan { groups: &groups, reference: 0, measures: &measures, ..*plan }, watch)
+        run_nodes(
+            &Plan {
+                groups: &groups,
+                reference: 0,
+                measures: &measures,
+                operation: operation.as_ref(),
+                ..*plan
+            },
+            watch,
+        )
     };
     let (first, others) = changes[1..].split_at(nodes_of_a_run.min(changes.len() - 1));
     let mut runs = with_reference(first)?;

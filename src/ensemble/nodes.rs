@@ -2,6 +2,7 @@
 
 use super::plan::Plan;
 use super::realization::NodeKept;
+use crate::operation::Operation;
 use crate::season::Measure;
 use ndarray::Array3;
 
@@ -10,7 +11,7 @@ use ndarray::Array3;
 pub struct NodeRuns {
     /// What was measured.
     pub measures: Vec<Measure>,
-    /// `[node][measure][realization]`, of the basin means.
+    /// `[node][measure][realization]`, of the basin means and of what became of the water, where it is asked.
     pub periods: Array3<f64>,
     /// `[node][realization][year]`: SWE of the basin on the first survey date in single years, mm.
     pub survey_swe_mm: Array3<f64>,
@@ -20,7 +21,8 @@ pub struct NodeRuns {
 
 impl NodeRuns {
     pub(super) fn gather(plan: &Plan<'_>, kept: &[NodeKept]) -> Self {
-        let measures = plan.measures.list().to_vec();
+        let mut measures = plan.measures.list().to_vec();
+        measures.extend(plan.operation.into_iter().flat_map(Operation::measures));
         let table = |rows: usize, of: fn(&NodeKept) -> &[f64]| {
             Array3::from_shape_fn((plan.levels(), rows, kept.len()), |(node, row, realization)| {
                 of(&kept[realization])[node * rows + row]

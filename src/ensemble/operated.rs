@@ -1,7 +1,7 @@
 //! What is kept of the water of a run: single years of inflow and storage, and what whole realizations come to.
 
 use crate::operation::{Better, CHANGED, Change, Operated, Operation};
-use crate::season::{Measure, period_value};
+use crate::season::Measure;
 use ndarray::{Array3, Array4};
 
 /// Inflow and storage of a run.
@@ -30,38 +30,37 @@ impl OperatedSeasons {
         let (yearly, over_years, tried) = (operation.yearly(), operation.over_years(), operation.tried());
         let (measures, realizations) = (yearly.len(), kept.len());
         let years = kept.first().map_or(0, |kept| kept.yearly.len() / (levels * measures));
-        let years = Array4::from_shape_fn(
-            (levels, measures, realizations, years),
-            |(level, measure, realization, year)| {
-                kept[realization].yearly[(level * years + year) * measures + measure]
-            },
-        );
-        let mut one = Vec::new();
-        let periods =
-            Array3::from_shape_fn((levels, measures, realizations), |(level, measure, realization)| {
-                one.clear();
-                one.extend((0..years.dim().3).map(|year| years[[level, measure, realization, year]]));
-                period_value(yearly[measure].kind, &mut one)
-            });
-        let wholes = Array3::from_shape_fn(
-            (levels, over_years.len(), realizations),
-            |(level, measure, realization)| kept[realization].over_years[level * over_years.len() + measure],
-        );
-        let changed = Array4::from_shape_fn(
-            (levels, tried.len(), CHANGED, realizations),
-            |(level, change, measure, realization)| {
-                kept[realization].changed[(level * tried.len() + change) * CHANGED + measure]
-            },
-        );
-        Self {
+        let mut seasons = Self {
+            years: Array4::zeros((levels, measures, realizations, years)),
+            periods: Array3::zeros((levels, measures, realizations)),
+            wholes: Array3::zeros((levels, over_years.len(), realizations)),
+            changed: Array4::from_shape_fn(
+                (levels, tried.len(), CHANGED, realizations),
+                |(level, change, measure, realization)| {
+                    kept[realization].changed[(level * tried.len() + change) * CHANGED + measure]
+                },
+            ),
             yearly,
-            years,
-            periods,
             over_years,
-            wholes,
             tried,
             of_changes: Operation::of_changes(),
-            changed,
+        };
+        for (realization, kept) in kept.iter().enumerate() {
+            for level in 0..levels {
+                for (year, values) in kept.years((level, levels), measures).enumerate() {
+                    for (measure, value) in values.iter().enumerate() {
+                        seasons.years[[level, measure, realization, year]] = *value;
+                    }
+                }
+                let values = operation.period_values(kept, (level, levels));
+                for (measure, value) in values.into_iter().enumerate() {
+                    match measure.checked_sub(measures) {
+                        None => seasons.periods[[level, measure, realization]] = value,
+                        Some(whole) => seasons.wholes[[level, whole, realization]] = value,
+                    }
+                }
+            }
         }
+        seasons
     }
 }

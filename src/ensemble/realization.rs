@@ -30,7 +30,7 @@ pub(super) struct Kept {
 pub(super) struct NodeKept {
     /// `[node][year]`, the first measure of the basin means.
     pub survey_swe_mm: Vec<f64>,
-    /// `[node][measure]`: period values of the basin means.
+    /// `[node][measure]`: period values of the basin means, and behind them what became of the water, where it is asked.
     pub basin: Vec<f64>,
     /// `[node][band]`: period values of SWE on the first survey date.
     pub band_swe_mm: Vec<f64>,
@@ -145,12 +145,13 @@ impl<'p> Workshop<'p> {
                 Remembered {
                     is_perennial: plan.keeps_snow(group, block),
                     swe_bins: Vec::new(),
-                    water_input_mm: Vec::new(),
+                    water_input_mm: plan.water_input_mm(block, block.mixes_at, nodes),
                     first: block.first,
                     measured,
                 }
             })
         })?;
+        let operated = self.operate()?;
         let bench = &self.benches[self.of_reference];
         let of_bands = nodes * bands;
         let mut one = Vec::with_capacity(plan.years);
@@ -169,6 +170,9 @@ impl<'p> Workshop<'p> {
             for (at, measure) in measures.iter().enumerate() {
                 let place = |year: &[f64]| year[(year.len() - of_bands) / measures.len() * at + node];
                 kept.basin.push(period(measure.kind, &place));
+            }
+            if let Some(operation) = plan.operation {
+                kept.basin.extend(operation.period_values(&operated, (node, nodes)));
             }
         }
         for band in 0..of_bands {

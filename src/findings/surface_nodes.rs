@@ -9,6 +9,8 @@ use ndarray::Axis;
 
 /// Measures that stand on the surface beside the headline's and the first volume: half of the net melt done, melt-out, days under snow.
 const BESIDE: [&str; 3] = ["melt_d50_day", MELT_OUT_DAY, "snow_covered_days"];
+/// The same of what becomes of the water, behind the first window's inflow.
+const OF_STORAGE: [&str; 3] = ["storage_year_end_hm3", "shortage_hm3", "reliability_volume_share"];
 
 /// All nodes that were run.
 #[derive(Debug, Clone)]
@@ -76,7 +78,9 @@ impl Nodes {
         let measures = &self.runs.measures;
         let beside = |name: &&str| measures.iter().position(|measure| measure.name == **name);
         let volume = measures.iter().position(|measure| measure.is_volume);
-        std::iter::once(0).chain(volume).chain(BESIDE.iter().filter_map(beside)).collect()
+        let inflow = measures.iter().position(|measure| measure.is_volume && measure.kind == Kind::VolumeHm3);
+        let of_snow = std::iter::once(0).chain(volume).chain(BESIDE.iter().filter_map(beside));
+        of_snow.chain(inflow).chain(OF_STORAGE.iter().filter_map(beside)).collect()
     }
 
     /// What stands on the surface.

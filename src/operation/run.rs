@@ -23,6 +23,16 @@ pub struct Operated {
 }
 
 impl Operated {
+    /// The years of one of so many levels, each with so many measures.
+    pub fn years(
+        &self,
+        (level, levels): (usize, usize),
+        measures: usize,
+    ) -> impl Iterator<Item = &[f64]> + Clone {
+        let years = self.yearly.len() / (levels * measures);
+        self.yearly.chunks_exact(measures).skip(level * years).take(years)
+    }
+
     /// Puts more levels behind its own.
     pub fn append(&mut self, more: Self) {
         self.yearly.extend(more.yearly);

@@ -235,9 +235,10 @@ impl Reader {
     }
 }
 
-/// Whole percent, and tenths below 10 %.
+/// Whole percent, and tenths near none and near all, below 10 and above 90 %.
 fn share_decimals(share: f64) -> usize {
-    usize::from(100.0 * share.abs() < 9.95)
+    let from_an_end = share.abs().min(1.0 - share.abs());
+    usize::from(100.0 * from_an_end < 9.95)
 }
 
 #[cfg(test)]

@@ -14,16 +14,20 @@ mod generator_sheet;
 mod ground;
 mod lines;
 mod measures;
+mod operations;
 mod parameter_spread;
 mod record_odds;
 mod record_range;
 mod record_years;
 mod replayed_years;
 mod response_surface;
+mod rule_changes;
 mod rule_panel;
+mod seasonal_outlook;
 mod through_year;
 mod volumes;
 mod yardsticks;
+mod year_classes;
 
 pub(super) use about::about;
 pub(super) use cells::{finish, optional, write, yes_or_no};
@@ -93,6 +97,20 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
         add("what-decides", lines::what_decides(&places.crossover, units));
         if let Some(found) = &places.at_risk {
             add("at-risk-snow", lines::at_risk_snow(found, units));
+        }
+    }
+    if let Some(found) = &findings.operations {
+        for (name, table) in operations::operations(found, units) {
+            add(name, table);
+        }
+        if !found.rule_changes.is_empty() {
+            add("rule-changes", rule_changes::rule_changes(&found.rule_changes, units));
+        }
+        if let Some(classes) = &found.year_classes {
+            add("year-classes", year_classes::year_classes(classes, units));
+        }
+        if let Some(outlook) = &found.outlook {
+            add("seasonal-outlook", seasonal_outlook::seasonal_outlook(outlook, units));
         }
     }
     add("record-years", record_years::record_years(study));

@@ -15,6 +15,7 @@ use serde::Serialize;
 pub(super) const ADDRESS: &str = "try-a-change";
 
 /// Whole days.
+const TENTHS: Decimals = Decimals { below: &[], otherwise: 1 };
 const WHOLE: Decimals = Decimals { below: &[], otherwise: 0 };
 
 /// What the script reads: the nodes in the reader's units, and the words that it needs.
@@ -193,7 +194,8 @@ fn measure_row(
         Kind::AmountMm => ("amount", depth.word, reader.depth_decimals(), depth.of(1.0)),
         Kind::DayOfWaterYear | Kind::ArrivalDay => ("date", "days", WHOLE, 1.0),
         Kind::DayCount => ("days", "days", WHOLE, 1.0),
-        Kind::AmountMmDays | Kind::Share => return None,
+        Kind::Share => ("amount", "%", TENTHS, 100.0),
+        Kind::AmountMmDays => return None,
     };
     let of = |node: &NodeMeasure| match node.median {
         Outcome::Value(value) => Some(factor * value),

@@ -64,6 +64,10 @@ const ABOUT: &[(&str, &str)] = &[
         "What one degree and one percent of precipitation do, by level, in the basin and every band.",
     ),
     ("generator-sheet", "Statistics of the record beside those of realizations as long as it."),
+    (
+        "inflow",
+        "Inflow, or water input routed, by measure and level: quantiles over realizations, paired shift, whether warming outweighs.",
+    ),
     ("low-runs", "Chance that a realization holds low years in a row, by length and level."),
     ("low-snow-in-the-record", "Low-snow years among the record's own, run at every level."),
     ("low-snow-odds", "Chance of a low-snow year by level, and its ratio to the reference's."),
@@ -97,9 +101,22 @@ const ABOUT: &[(&str, &str)] = &[
         "Every node of warming by precipitation change: medians, changes from the reference.",
     ),
     ("response-surface-bands", "Median SWE of every band at every node of warming by precipitation change."),
+    (
+        "reservoir-performance",
+        "Reliability, resilience and vulnerability of whole realizations by level: quantiles, paired shift, whether warming outweighs.",
+    ),
+    (
+        "rule-changes",
+        "The reservoir under other rules, by measure and level, and how much of warming's loss each brings back.",
+    ),
     ("rule-panel", "The headline under other rules of the model, each tuned to the same snow first."),
+    ("seasonal-outlook", "How well the survey date's snow foretells the window's inflow, by level."),
     ("snow-droughts", "Years of dry and of warm snow drought by level."),
     ("snow-lines", "Elevation of the snow line and of freezing by level, and their rise with warming."),
+    (
+        "storage",
+        "Storage, shortage, spill and releases by measure and level: quantiles over realizations, paired shift, whether warming outweighs.",
+    ),
     ("swe-change-by-band", "What every band loses or gains by level, as depth, percent and volume."),
     (
         "swe-through-year",
@@ -120,6 +137,10 @@ const ABOUT: &[(&str, &str)] = &[
     (
         "yardsticks",
         "The same shifts against other spreads: other periods, other assumed changes, temperatures held.",
+    ),
+    (
+        "year-classes",
+        "Years by the study's own classes of inflow: shares by level, and limits that would keep them.",
     ),
     ("year-types", "Years by fifths of the reference: shares by level, and limits that would keep them."),
 ];

@@ -5,7 +5,7 @@ use crate::findings::{Exceeded, Findings, LevelFindings, MeasureFindings, Range}
 use crate::units::{UnitSystem, cubic_hectometres};
 use csv::Writer;
 
-/// One row a basin measure, level and chance; nothing of measures that are told as no volume, and of levels at which a year
+/// One row a measure of the basin or of inflow, level and chance; nothing of measures that are told as no volume, and of levels at which a year
 /// has no value.
 pub(super) fn volumes(findings: &Findings, area_km2: f64, units: UnitSystem) -> Vec<u8> {
     let (depth, volume) = (units.depth().suffix, units.volume().suffix);
@@ -25,7 +25,8 @@ pub(super) fn volumes(findings: &Findings, area_km2: f64, units: UnitSystem) -> 
         format!("volume_record_q95_{volume}"),
     ];
     write(&mut writer, &header);
-    for found in &findings.basin {
+    let of_inflow = findings.operations.iter().flat_map(|operations| &operations.inflow);
+    for found in findings.basin.iter().chain(of_inflow) {
         for (at, level) in found.levels.iter().enumerate() {
             let record = found.record_range.as_ref().map(|range| range.levels[at].exceeded_mm.as_slice());
             for (chance, exceeded) in level.exceeded.iter().enumerate() {
