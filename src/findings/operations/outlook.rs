@@ -36,9 +36,9 @@ pub struct OutlookLevel {
     /// The same over the mean volume, percent.
     pub interval_pct: Option<Ranged>,
     /// What the reference's line foretells less what comes, the mean over years, hm3.
-    pub old_line_error_hm3: Option<Ranged>,
+    pub old_line_off_hm3: Option<Ranged>,
     /// The same over the mean volume, percent.
-    pub old_line_error_pct: Option<Ranged>,
+    pub old_line_off_pct: Option<Ranged>,
 }
 
 /// Nine of ten of a normal distribution lie within so many standard deviations.
@@ -107,8 +107,8 @@ impl Outlook {
                 rank_correlation: ranged(&|weights| Some(all(&of_ranks, weights).line()?.correlation)),
                 interval_hm3: ranged(&width),
                 interval_pct: ranged(&|weights| pct(width(weights), weights)),
-                old_line_error_hm3: ranged(&old_line),
-                old_line_error_pct: ranged(&|weights| pct(old_line(weights), weights)),
+                old_line_off_hm3: ranged(&old_line),
+                old_line_off_pct: ranged(&|weights| pct(old_line(weights), weights)),
             }
         };
         let levels = levels.levels_c.iter().enumerate().map(of_level).collect();
@@ -217,9 +217,9 @@ mod tests {
         is(&found.levels[0].correlation, 0.8);
         is(&found.levels[0].rank_correlation, 0.8);
         is(&found.levels[0].interval_hm3, 2.0 * NINE_IN_TEN * 1.2_f64.sqrt());
-        is(&found.levels[0].old_line_error_hm3, 0.0);
-        is(&found.levels[1].old_line_error_hm3, 1.0);
-        is(&found.levels[1].old_line_error_pct, 50.0);
+        is(&found.levels[0].old_line_off_hm3, 0.0);
+        is(&found.levels[1].old_line_off_hm3, 1.0);
+        is(&found.levels[1].old_line_off_pct, 50.0);
     }
 
     /// By hand: 10 20 20 30 have the ranks 1, 2.5, 2.5, 4.
@@ -234,6 +234,6 @@ mod tests {
         let swe = array![[[0.0, 0.0, 0.0]], [[0.0, 0.0, 0.0]]];
         let found = outlook(&swe, &array![[[1.0, 2.0, 3.0]], [[1.0, 2.0, 3.0]]]);
         assert_eq!(found.levels[0].correlation, None);
-        assert_eq!(found.levels[1].old_line_error_hm3, None);
+        assert_eq!(found.levels[1].old_line_off_hm3, None);
     }
 }

@@ -7,7 +7,7 @@ use super::super::ranged::{Ranged, bound_of_certain};
 use super::super::resample::{Ranked, Resamples};
 use super::super::yardstick::Levels;
 use crate::season::Measure;
-use ndarray::{ArrayView3, Axis};
+use ndarray::{ArrayView1, ArrayView2, ArrayView3, Axis};
 use serde::Serialize;
 
 /// Classes of years by a volume.
@@ -48,31 +48,28 @@ impl YearClasses {
             return None;
         }
         let realizations = volumes.dim().1;
-        let few = resamples.few();
-        let ranked = |level: usize| {
-            let years = volumes.index_axis(Axis(0), level);
-            Ranked::new(years.indexed_iter().map(|((realization, _), hm3)| (*hm3, realization)))
-        };
-        let reference = ranked(levels.reference);
         let once = vec![1; realizations];
+        let of_reference = Counts::of(&volumes.index_axis(Axis(0), levels.reference), limits_hm3);
         let of_level = |(level, level_c): (usize, &f64)| {
-            let years = ranked(level);
-            let own = shares(&years, limits_hm3, &once);
-            let resampled = few.each(|weights| shares(&years, limits_hm3, weights));
+            let years = volumes.index_axis(Axis(0), level);
+            let counts = Counts::of(&years, limits_hm3);
+            let own = counts.shares(&once);
+            let resampled = resamples.each(|weights| counts.shares(weights));
             let ranged = |class: usize| Ranged::new(own[class], resampled.iter().map(|all| Some(all[class])));
-            let kept = |limit: &f64| {
+            let ranked = Ranked::new(years.indexed_iter().map(|((realization, _), hm3)| (*hm3, realization)));
+            let kept = |limit: usize| {
                 let of = |weights: &[u32]| {
-                    let below = share_below(&reference, *limit, weights);
+                    let below: f64 = of_reference.shares(weights)[..=limit].iter().sum();
                     let is_inside = below > 0.0 && below < 1.0;
-                    is_inside.then(|| years.quantiles(weights, [below]).map(|[hm3]| hm3)).flatten()
+                    is_inside.then(|| ranked.quantiles(weights, [below]).map(|[hm3]| hm3)).flatten()
                 };
-                Some(Ranged::new(of(&once)?, few.each(of)))
+                Some(Ranged::new(of(&once)?, resamples.each(of)))
             };
             YearClassesLevel {
                 level_c: *level_c,
                 shares: (0..own.len()).map(ranged).collect(),
                 bounds: own.iter().map(|share| bound_of_certain(*share, realizations)).collect(),
-                kept_limits_hm3: limits_hm3.iter().map(kept).collect(),
+                kept_limits_hm3: (0..limits_hm3.len()).map(kept).collect(),
             }
         };
         Some(Self {
@@ -83,26 +80,31 @@ impl YearClasses {
     }
 }
 
-/// Share of years in each class, in a resample.
-fn shares(years: &Ranked, limits_hm3: &[f64], weights: &[u32]) -> Vec<f64> {
-    let mut counts = vec![0.0; limits_hm3.len() + 1];
-    let mut all = 0.0;
-    for (hm3, realization) in years.values() {
-        let weight = f64::from(weights[*realization]);
-        counts[limits_hm3.partition_point(|limit| limit <= hm3)] += weight;
-        all += weight;
-    }
-    counts.iter().map(|count| count / all).collect()
-}
+/// Years in each class, `[realization][class]`, of which the shares of every resample are made.
+struct Counts(Vec<Vec<f64>>);
 
-fn share_below(years: &Ranked, limit_hm3: f64, weights: &[u32]) -> f64 {
-    let (mut below, mut all) = (0.0, 0.0);
-    for (hm3, realization) in years.values() {
-        let weight = f64::from(weights[*realization]);
-        below += if *hm3 < limit_hm3 { weight } else { 0.0 };
-        all += weight;
+impl Counts {
+    fn of(years: &ArrayView2<'_, f64>, limits_hm3: &[f64]) -> Self {
+        let of_realization = |years: ArrayView1<'_, f64>| {
+            let mut counts = vec![0.0; limits_hm3.len() + 1];
+            for hm3 in years {
+                counts[limits_hm3.partition_point(|limit| limit <= hm3)] += 1.0;
+            }
+            counts
+        };
+        Self(years.rows().into_iter().map(of_realization).collect())
     }
-    below / all
+
+    /// Share of years in each class, in a resample.
+    fn shares(&self, weights: &[u32]) -> Vec<f64> {
+        let classes = self.0.first().map_or(0, Vec::len);
+        let mut sums = vec![0.0; classes];
+        for (counts, weight) in self.0.iter().zip(weights) {
+            sums.iter_mut().zip(counts).for_each(|(sum, count)| *sum += f64::from(*weight) * count);
+        }
+        let all: f64 = sums.iter().sum();
+        sums.iter().map(|sum| sum / all).collect()
+    }
 }
 
 #[cfg(test)]

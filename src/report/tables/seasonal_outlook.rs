@@ -13,7 +13,7 @@ pub(super) fn seasonal_outlook(found: &Outlook, units: UnitSystem) -> Vec<u8> {
     for number in ["correlation", "rank_correlation"] {
         header.extend(["", "_q05", "_q95"].map(|end| format!("{number}{end}")));
     }
-    for number in ["interval_of_nine_in_ten", "old_line_error"] {
+    for number in ["interval_of_nine_in_ten", "old_line_off"] {
         header.extend(["", "_q05", "_q95"].map(|end| format!("{number}{end}_{}", volume.suffix)));
         header.extend(["", "_q05", "_q95"].map(|end| format!("{number}{end}_pct")));
     }
@@ -31,8 +31,8 @@ pub(super) fn seasonal_outlook(found: &Outlook, units: UnitSystem) -> Vec<u8> {
         row.extend(told(level.rank_correlation, &plain));
         row.extend(told(level.interval_hm3, &as_volume));
         row.extend(told(level.interval_pct, &plain));
-        row.extend(told(level.old_line_error_hm3, &as_volume));
-        row.extend(told(level.old_line_error_pct, &plain));
+        row.extend(told(level.old_line_off_hm3, &as_volume));
+        row.extend(told(level.old_line_off_pct, &plain));
         write(&mut writer, &row);
     }
     finish(writer)
