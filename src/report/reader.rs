@@ -237,8 +237,8 @@ impl Reader {
 
 /// Whole percent, and tenths near none and near all, below 10 and above 90 %.
 fn share_decimals(share: f64) -> usize {
-    let from_an_end = share.abs().min(1.0 - share.abs());
-    usize::from(100.0 * from_an_end < 9.95)
+    let percent = 100.0 * share.abs();
+    usize::from(percent < 9.95 || (90.05..99.95).contains(&percent))
 }
 
 #[cfg(test)]
