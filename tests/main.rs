@@ -8,6 +8,7 @@ mod cli;
 mod golden;
 mod invariants;
 mod naive;
+mod naive_operation;
 mod naive_season;
 mod parameters;
 mod plausibility;

@@ -131,13 +131,15 @@ impl YearBooks {
         }
     }
 
-    /// Enters a day, the `number`th of the year; full is what holds at least `full_hm3` as it ends.
+    /// Enters a day, the `number`th of the year; full is what holds at least `full_hm3` as it ends, to a cubic metre: a release
+    /// down to the capacity may round below it.
     #[inline(always)]
     pub fn enter(&mut self, number: f64, day: &Day, out: &Outcome, full_hm3: f64) {
         self.ledger.enter(day.inflow_hm3, out);
         self.storage_hm3 = out.storage_hm3;
         self.lowest_hm3 = self.lowest_hm3.min(out.storage_hm3);
-        self.fill_day = if out.storage_hm3 >= full_hm3 { self.fill_day.min(number) } else { self.fill_day };
+        let is_full = out.storage_hm3 >= full_hm3 - LEAST_HM3;
+        self.fill_day = if is_full { self.fill_day.min(number) } else { self.fill_day };
         self.demanded_hm3 += day.demand_hm3;
         self.shortage_hm3 += out.shortage_hm3;
         self.short_days += counted(out.shortage_hm3 > LEAST_HM3);
