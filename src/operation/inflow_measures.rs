@@ -1,9 +1,9 @@
 //! What a year's inflow comes to: volumes, shares before days and by month, its centroid and its largest days.
 
+use super::dates::Dates;
 use super::plan::OperationSettings;
-use crate::calendar::{MONTHS, MonthDay, day_of_water_year, days_between};
+use crate::calendar::MONTHS;
 use crate::season::{Kind, Measure, NONE, name_of};
-use chrono::{Datelike, NaiveDate};
 
 /// Lengths of the largest inflow, days.
 const LARGEST_OF_DAYS: [usize; 3] = [1, 3, 7];
@@ -47,41 +47,46 @@ pub(super) fn list(settings: &OperationSettings) -> Vec<Measure> {
 }
 
 /// Every measure of one year's inflow, hm3 a day.
-pub(super) fn take(settings: &OperationSettings, first: NaiveDate, inflow_hm3: &[f64], into: &mut Vec<f64>) {
-    let at = |day: MonthDay| day_of_water_year(first, day) - 1;
+pub(super) fn take(dates: &Dates, inflow_hm3: &[f64], into: &mut Vec<f64>) {
     let sum = |days: &[f64]| days.iter().fold(0.0, |sum, hm3| sum + hm3);
     let year_hm3 = sum(inflow_hm3);
     let share = |hm3: f64| if year_hm3 > 0.0 { hm3 / year_hm3 } else { NONE };
-    into.extend(settings.volume_windows.iter().map(|[from, to]| sum(&inflow_hm3[at(*from)..=at(*to)])));
+    into.extend(dates.windows.iter().map(|[from, to]| sum(&inflow_hm3[*from..=*to])));
     into.push(year_hm3);
-    into.extend(settings.shares_before.iter().map(|day| share(sum(&inflow_hm3[..at(*day)]))));
+    into.extend(dates.shares_before.iter().map(|day| share(sum(&inflow_hm3[..*day]))));
     let mut months_hm3 = [0.0; 12];
-    let mut moment = 0.0;
-    for ((date, hm3), day) in first.iter_days().zip(inflow_hm3).zip(1..) {
-        months_hm3[date.month0() as usize] += hm3;
-        moment += f64::from(day) * hm3;
+    let (mut moment, mut number) = (0.0, 0.0);
+    for (month, hm3) in dates.month.iter().zip(inflow_hm3) {
+        number += 1.0;
+        months_hm3[*month] += hm3;
+        moment += number * hm3;
     }
-    into.extend(settings.months().map(|month| share(months_hm3[month])));
+    let first = dates.month.first().copied().unwrap_or_default();
+    into.extend((0..12).map(|month| share(months_hm3[(first + month) % 12])));
     into.push(if year_hm3 > 0.0 { moment / year_hm3 } else { NONE });
-    into.extend(LARGEST_OF_DAYS.map(|days| inflow_hm3.windows(days).map(sum).fold(0.0, f64::max)));
+    into.extend(largest(inflow_hm3));
 }
 
-/// The place of a date among those of a common year, 1 January at 0; 29 February is its 28th.
-pub(super) fn common_date(date: NaiveDate) -> usize {
-    let new_year = NaiveDate::from_ymd_opt(date.year(), 1, 1).unwrap_or(NaiveDate::MIN);
-    let is_after_leap_day = date.leap_year() && (date.month(), date.day()) >= (2, 29);
-    days_between(new_year, date) - usize::from(is_after_leap_day)
+/// The largest inflow of 1, 3 and 7 days in succession, hm3.
+fn largest(inflow_hm3: &[f64]) -> [f64; LARGEST_OF_DAYS.len()] {
+    let three = |from: usize| inflow_hm3[from] + inflow_hm3[from + 1] + inflow_hm3[from + 2];
+    let most = |days: usize, sum: &dyn Fn(usize) -> f64| {
+        (0..(inflow_hm3.len() + 1).saturating_sub(days)).map(sum).fold(0.0, f64::max)
+    };
+    let seven = |from: usize| three(from) + three(from + 3) + inflow_hm3[from + 6];
+    [most(1, &|from| inflow_hm3[from]), most(3, &three), most(7, &seven)]
 }
 
 #[cfg(test)]
 mod tests {
     use super::*;
+    use chrono::NaiveDate;
 
     fn taken(inflow_hm3: &[f64]) -> Vec<(String, f64)> {
         let settings = OperationSettings::of_tests();
         let first = NaiveDate::from_ymd_opt(2000, 10, 1).unwrap();
         let mut into = Vec::new();
-        take(&settings, first, inflow_hm3, &mut into);
+        take(&Dates::of(&settings, first, inflow_hm3.len()), inflow_hm3, &mut into);
         let names = list(&settings).into_iter().map(|measure| measure.name);
         assert_eq!(names.len(), into.len());
         names.zip(into).collect()
@@ -125,16 +130,5 @@ mod tests {
         assert_eq!(of(&found, "inflow_year_hm3"), 0.0);
         assert_eq!(of(&found, "inflow_centroid_day"), NONE);
         assert_eq!(of(&found, "inflow_before_04_01_share"), NONE);
-    }
-
-    #[test]
-    fn common_dates_leave_the_leap_day_out() {
-        let date = |year, month, day| common_date(NaiveDate::from_ymd_opt(year, month, day).unwrap());
-        assert_eq!([date(2001, 1, 1), date(2001, 12, 31)], [0, 364]);
-        assert_eq!(
-            [date(2000, 2, 28), date(2000, 2, 29), date(2000, 3, 1), date(2001, 3, 1)],
-            [58, 58, 59, 59]
-        );
-        assert_eq!(date(2000, 12, 31), 364);
     }
 }

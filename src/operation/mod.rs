@@ -6,6 +6,7 @@
 
 mod all_books;
 mod change;
+mod dates;
 mod inflow_measures;
 mod plan;
 mod run;

@@ -2,14 +2,14 @@
 
 use super::all_books::{self, AllBooks, Better, CHANGED};
 use super::change::Change;
-use super::inflow_measures::{self, common_date};
+use super::dates::Dates;
+use super::inflow_measures;
 use super::plan::Operation;
 use super::year_books::YearBooks;
-use crate::calendar::{COMMON_DATES, day_of_water_year};
+use crate::calendar::COMMON_DATES;
 use crate::inflow::{Router, WaterYear};
 use crate::reservoir::{Day, OpenPool, Pool, Reservoir, step};
 use crate::season::Measure;
-use chrono::Datelike;
 
 /// What a realization comes to.
 #[derive(Debug, Clone, PartialEq, Default)]
@@ -82,13 +82,14 @@ impl Operation {
         let mut of_level = Vec::new();
         for year in years {
             router.year(year, &mut inflow);
+            let dates = Dates::of(&self.settings, year.first, year.days(levels));
             if let Some(stored) = &mut stored {
-                stored.year(year, &inflow, levels)?;
+                stored.year(&dates, &inflow, levels)?;
             }
             for (level, into) in yearly.iter_mut().enumerate() {
                 of_level.clear();
                 of_level.extend(inflow.iter().skip(level).step_by(levels));
-                inflow_measures::take(&self.settings, year.first, &of_level, into);
+                inflow_measures::take(&dates, &of_level, into);
                 if let Some(stored) = &stored {
                     stored.measures(level, into);
                 }
@@ -104,7 +105,6 @@ struct Stored<'a> {
     reservoir: &'a Reservoir,
     pool: Pool,
     full_hm3: f64,
-    dates: Vec<crate::calendar::MonthDay>,
     rules: Vec<Rules>,
     columns: Vec<Column>,
     /// `[date][column]`: storage on the dates of the year that was run last.
@@ -128,7 +128,6 @@ impl<'a> Stored<'a> {
             reservoir,
             pool: reservoir.pool(),
             full_hm3: reservoir.full_share * reservoir.capacity_hm3,
-            dates: operation.settings.all_storage_dates(),
             rules: rules.collect(),
             columns: (0..levels * changes).map(column).collect(),
             on_dates_hm3: Vec::new(),
@@ -136,32 +135,31 @@ impl<'a> Stored<'a> {
     }
 
     /// Steps every column through a year of inflow, `[day][level]`.
-    fn year(&mut self, year: &WaterYear<'_>, inflow_hm3: &[f64], levels: usize) -> Result<(), OpenPool> {
+    fn year(&mut self, dates: &Dates, inflow_hm3: &[f64], levels: usize) -> Result<(), OpenPool> {
         for column in &mut self.columns {
             column.year = YearBooks::open(column.storage_hm3);
         }
         self.on_dates_hm3.clear();
-        let mut dates = self.dates.iter().map(|day| day_of_water_year(year.first, *day)).peekable();
-        for ((number, date), inflow) in (1..).zip(year.first.iter_days()).zip(inflow_hm3.chunks_exact(levels))
-        {
-            if dates.next_if_eq(&number).is_some() {
+        let mut asked = dates.storage.iter().peekable();
+        let days = dates.month.iter().zip(&dates.common).enumerate();
+        for ((number, (month, common)), inflow) in days.zip(inflow_hm3.chunks_exact(levels)) {
+            if asked.next_if_eq(&&number).is_some() {
                 self.on_dates_hm3.extend(self.columns.iter().map(|column| column.storage_hm3));
             }
-            let (month, common) = (date.month0() as usize, common_date(date));
-            let evaporation_hm3 = self.reservoir.evaporation_hm3_per_day[month];
-            let minimum_hm3 = self.reservoir.minimum_release_hm3_per_day[month];
+            let evaporation_hm3 = self.reservoir.evaporation_hm3_per_day[*month];
+            let minimum_hm3 = self.reservoir.minimum_release_hm3_per_day[*month];
             for column in &mut self.columns {
                 let rules = &self.rules[column.change];
                 let day = Day {
                     inflow_hm3: inflow[column.level],
                     evaporation_hm3,
                     minimum_hm3,
-                    not_above_hm3: rules.not_above_hm3[common],
-                    demand_hm3: rules.demand_hm3[month],
+                    not_above_hm3: rules.not_above_hm3[*common],
+                    demand_hm3: rules.demand_hm3[*month],
                 };
                 let out = step(&self.pool, column.storage_hm3, &day);
                 column.storage_hm3 = out.storage_hm3;
-                column.year.enter(number as f64, &day, &out, self.full_hm3);
+                column.year.enter((number + 1) as f64, &day, &out, self.full_hm3);
                 column.all.enter(&day, &out);
             }
         }
