@@ -30,6 +30,7 @@ mod manual;
 mod methods;
 mod normal;
 mod observed;
+mod operation_tables;
 mod packages;
 mod parameter_sets;
 mod pictures;

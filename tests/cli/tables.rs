@@ -5,7 +5,7 @@ use serde_json::Value;
 use std::collections::HashMap;
 
 /// A row by the names of its columns.
-type Row = HashMap<String, String>;
+pub(super) type Row = HashMap<String, String>;
 
 /// A study with an assumed change of mean precipitation, in one unit system, and realizations enough for the generator sheet
 /// to be judged.
@@ -21,7 +21,7 @@ fn study(units: &str) -> (Basin, Value) {
     (basin, findings)
 }
 
-fn rows(basin: &Basin, table: &str) -> Vec<Row> {
+pub(super) fn rows(basin: &Basin, table: &str) -> Vec<Row> {
     let text = basin.read(&format!("out/tables/{table}.csv"));
     let mut reader = csv::Reader::from_reader(text.as_bytes());
     let header: Vec<String> = reader.headers().unwrap().iter().map(str::to_owned).collect();
@@ -29,12 +29,12 @@ fn rows(basin: &Basin, table: &str) -> Vec<Row> {
     reader.records().map(|row| named(row.unwrap())).collect()
 }
 
-fn list(value: &Value) -> &[Value] {
+pub(super) fn list(value: &Value) -> &[Value] {
     value.as_array().map_or(&[], Vec::as_slice)
 }
 
 /// A cell against a number of the summary, which may be missing, times a factor; 1e-12 is the rounding of a conversion.
-fn hold(row: &Row, column: &str, expected: &Value, factor: f64) {
+pub(super) fn hold(row: &Row, column: &str, expected: &Value, factor: f64) {
     let cell = row.get(column).unwrap_or_else(|| panic!("no column {column}: {row:?}"));
     match expected.as_f64() {
         Some(expected) => {
@@ -47,14 +47,14 @@ fn hold(row: &Row, column: &str, expected: &Value, factor: f64) {
 
 /// What a reader's units make of mm, of hm3 and of a degC of warming: 25.4 mm an inch, 1233.4818375 m3 an acre-foot (NIST
 /// SP 811), 9 degF for 5 degC.
-struct Told {
-    depth: (&'static str, f64),
-    volume: (&'static str, f64),
-    warming: (&'static str, f64),
+pub(super) struct Told {
+    pub depth: (&'static str, f64),
+    pub volume: (&'static str, f64),
+    pub warming: (&'static str, f64),
 }
 
-const METRIC: Told = Told { depth: ("mm", 1.0), volume: ("hm3", 1.0), warming: ("degC", 1.0) };
-const US: Told = Told {
+pub(super) const METRIC: Told = Told { depth: ("mm", 1.0), volume: ("hm3", 1.0), warming: ("degC", 1.0) };
+pub(super) const US: Told = Told {
     depth: ("in", 1.0 / 25.4),
     volume: ("thousand_acre_feet", 1.0 / 1.233_481_837_547_52),
     warming: ("degF", 1.8),
@@ -62,14 +62,15 @@ const US: Told = Told {
 
 impl Told {
     /// The factor of a measure's values.
-    fn of(&self, measure: &Value) -> f64 {
+    pub fn of(&self, measure: &Value) -> f64 {
         match measure["kind"].as_str().unwrap() {
             "amount_mm" | "amount_mm_days" => self.depth.1,
+            "volume_hm3" => self.volume.1,
             _ => 1.0,
         }
     }
 
-    fn level(&self, row: &Row, level: &Value) {
+    pub fn level(&self, row: &Row, level: &Value) {
         hold(row, &format!("level_{}", self.warming.0), &level["level_c"], self.warming.1);
     }
 
