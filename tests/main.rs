@@ -13,4 +13,5 @@ mod naive_season;
 mod parameters;
 mod plausibility;
 mod record;
+mod rooms;
 mod vectors;

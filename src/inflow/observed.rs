@@ -109,8 +109,9 @@ fn read_flow(
     let number = tally.keep(table.number(row, column)).flatten()?;
     let hm3 = columns.flow.unit.to_hm3_a_day(number) + 0.0;
     if hm3.abs() > MOST_HM3 {
+        let expected = format!("at most {MOST_HM3} hm3 a day, more than any river brings");
         let mend = "check the unit, and what 'missing' says";
-        tally.push(table.cell_fault(row, column, "a day's mean flow of a river", mend));
+        tally.push(table.cell_fault(row, column, &expected, mend));
         return None;
     }
     Some(hm3)

@@ -72,7 +72,7 @@ impl Reservoir {
             within(faults, key, value, from..=capacity, "hm3, the capacity", mend);
         };
         below(&mut faults, "reservoir.dead_storage_hm3", self.dead_hm3, 0.0, "what lies below the outlets");
-        if self.dead_hm3 >= capacity {
+        if self.dead_hm3 == capacity {
             faults.push(Fault::key(
                 "reservoir.dead_storage_hm3",
                 self.dead_hm3,
@@ -87,21 +87,18 @@ impl Reservoir {
             0.0,
             "what a realization begins with",
         );
+        // Between which volumes a rule may lie is known only of a dead storage that can be.
+        let least = if self.dead_hm3 < capacity { self.dead_hm3.max(0.0) } else { 0.0 };
         for (at, point) in self.flood_rule.iter().enumerate() {
-            let key = format!("reservoir.storage_not_above_hm3[{at}]");
-            below(
-                &mut faults,
-                &key,
-                point.not_above_hm3,
-                self.dead_hm3,
-                "a volume between dead storage and capacity",
-            );
+            let key = |of: &str| format!("reservoir.flood_space[{at}].{of}");
+            let mend = "a volume between dead storage and capacity";
+            below(&mut faults, &key("storage_not_above_hm3"), point.not_above_hm3, least, mend);
             if self.flood_rule[..at].iter().any(|other| other.on == point.on) {
                 faults.push(Fault::key(
-                    key,
-                    format!("{} twice", point.on.words()),
+                    key("on"),
+                    format!("{} a second time", point.on.words()),
                     "each day once",
-                    "take one of them out",
+                    "take one of the two out, or give it another day",
                 ));
             }
         }
@@ -119,20 +116,25 @@ impl Reservoir {
             ("reservoir.evaporation", &self.evaporation_hm3_per_day),
         ];
         for (key, daily_hm3) in monthly {
-            if let Some(wrong) = daily_hm3.iter().find(|hm3| !(hm3.is_finite() && **hm3 >= 0.0)) {
-                faults.push(Fault::key(key, wrong, "0 or more in every month", "0 where there is none"));
+            for (month, hm3) in daily_hm3.iter().enumerate() {
+                if !(hm3.is_finite() && *hm3 >= 0.0) {
+                    let key = format!("{key}[{month}]");
+                    faults.push(Fault::key(key, hm3, "0 or more in every month", "0 where there is none"));
+                }
             }
         }
-        let minimum = self.minimum_release_hm3_per_day.iter().copied().fold(0.0, f64::max);
-        if minimum > self.release_capacity_hm3_per_day && faults.is_empty() {
+        let passes = self.release_capacity_hm3_per_day;
+        let beyond = self.minimum_release_hm3_per_day.iter().enumerate().find(|(_, hm3)| **hm3 > passes);
+        if let (Some((month, minimum)), true) = (beyond, faults.is_empty()) {
             faults.push(Fault::key(
-                "reservoir.minimum_release",
-                format!("{minimum} hm3 a day"),
-                format!("at most what the outlets pass, {} hm3 a day", self.release_capacity_hm3_per_day),
+                format!("reservoir.minimum_release[{month}]"),
+                minimum,
+                format!("at most what the outlets pass, {passes:.5} hm3 a day"),
                 "correct one of the two; mind their units",
             ));
         }
-        within(&mut faults, "reservoir.full_share", self.full_share, 0.5..=1.0, "", "of the capacity");
+        let mend = "a share of the capacity";
+        within(&mut faults, "reservoir.full_share", self.full_share, 0.5..=1.0, "", mend);
         if faults.is_empty() { Ok(()) } else { Err(faults) }
     }
 

@@ -102,20 +102,25 @@ fn read_slow(mut section: Section<'_>) -> Option<SlowStore> {
 
 fn read_limits(section: &mut Section<'_>) -> Option<Vec<f64>> {
     let has_any = LIMITS.iter().any(|key| section.has(key));
-    let Some(Stated { key, value }) = section.volumes(LIMITS) else {
+    let Some(Stated { key, typed, value }) = section.volumes(LIMITS) else {
         return (!has_any).then(Vec::new);
     };
-    let is_ascending = value.windows(2).all(|pair| pair[0] < pair[1]);
-    if value.is_empty() || value.len() > MOST_LIMITS || value[0] <= 0.0 || !is_ascending {
-        section.fault(Fault::key(
-            section.path_of(key),
-            format!("{} volumes", value.len()),
-            format!("one to {MOST_LIMITS} volumes above 0, each larger than the one before"),
-            "the volumes of the first window at which one class of years ends and the next begins",
-        ));
-        return None;
-    }
-    Some(value)
+    let before = std::iter::once(&0.0).chain(&typed);
+    let not_above = before.zip(&typed).position(|(before, limit)| limit <= before);
+    let (place, found) = match not_above {
+        _ if typed.is_empty() || typed.len() > MOST_LIMITS => {
+            (section.path_of(key), format!("{} volumes", typed.len()))
+        }
+        Some(at) => (section.path_of(&format!("{key}[{at}]")), typed[at].to_string()),
+        None => return Some(value),
+    };
+    section.fault(Fault::key(
+        place,
+        found,
+        format!("one to {MOST_LIMITS} volumes above 0, each larger than the one before"),
+        "the volumes of the first window at which one class of years ends and the next begins",
+    ));
+    None
 }
 
 /// More classes than these are none.

@@ -4,6 +4,7 @@
 //! fault and every default in force; one file a table of the scenario; `draw` shows faults in their place. Only `cli`
 //! imports this room.
 
+mod as_typed;
 mod basin;
 mod days;
 mod degrees;

@@ -1,7 +1,7 @@
 //! The known word that a mistyped one most likely meant.
 
 /// The nearest of `known` by the fewest letters changed, added, dropped or exchanged with their neighbour; none where
-/// even the nearest is far.
+/// even the nearest is far. A word of which the typed one is the beginning comes before all others.
 pub(super) fn nearest<'k>(typed: &str, known: impl IntoIterator<Item = &'k str>) -> Option<&'k str> {
     let length = typed.chars().count();
     let close_enough = (length / 3).max(2).min(length.saturating_sub(1));
@@ -18,7 +18,7 @@ pub(super) fn nearest<'k>(typed: &str, known: impl IntoIterator<Item = &'k str>)
         .filter(|(distance, word)| {
             *distance <= close_enough || word.starts_with(typed) || typed.starts_with(word)
         })
-        .min_by_key(|(distance, _)| *distance)
+        .min_by_key(|(distance, word)| (!word.starts_with(typed), *distance))
         .map(|(_, word)| word)
 }
 
@@ -52,6 +52,10 @@ mod tests {
         assert_eq!(nearest("melt_bsae_c", known), Some("melt_base_c"));
         assert_eq!(nearest("degree", known), Some("degree_rule"));
         assert_eq!(nearest("albedo", known), None);
+        assert_eq!(
+            nearest("demand_hm3", ["demand_cfs", "demand_hm3_per_month"]),
+            Some("demand_hm3_per_month")
+        );
         assert_eq!(nearest("F", ["degC", "degF", "K"]), Some("degF"));
         assert_eq!(nearest("celsius", ["degC", "degF", "K"]), None);
     }

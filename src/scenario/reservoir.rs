@@ -1,9 +1,10 @@
 //! `[reservoir]`: what it holds, what it must give, and what could be changed.
 
+use super::as_typed::{Typed, note_as_typed};
 use super::section::Section;
 use super::volumes::Stated;
 use crate::calendar::MonthDay;
-use crate::fault::{Fault, Place};
+use crate::fault::Fault;
 use crate::operation::Change;
 use crate::reservoir::{Demand, Reservoir, RulePoint};
 
@@ -51,44 +52,56 @@ fn read_keys(section: &mut Section<'_>, is_southern: bool) -> Option<ReservoirTy
     let capacity = required_volume(section, CAPACITY, "what it holds when full");
     let dead = volume_or(section, DEAD, 0.0);
     let starting = required_volume(section, STARTING, "what each realization begins with");
-    let release_capacity = required_flow(section, &RELEASE_CAPACITY, "what its outlets pass together");
+    let release_capacity = required_outlets(section);
     let minimum = flow_or_none(section, &MINIMUM);
     let demand = read_demand(section);
     let evaporation = flow_or_none(section, &EVAPORATION);
     let rule = read_rule(section.sections("flood_space"));
-    let full_share = section.number_or("full_share", FULL_SHARE, 0.5..=1.0, "of the capacity");
+    let full_share = section.number_or("full_share", FULL_SHARE, 0.5..=1.0, "a share of the capacity");
     let storage_dates = read_dates(section, is_southern);
-    let has_rule = rule.as_ref().is_some_and(|rule| !rule.is_empty());
+    // A rule with a fault is a rule.
+    let is_no_list = section.has("flood_space") && !section.is_list("flood_space");
+    let has_rule = is_no_list || rule.as_ref().is_none_or(|rule| !rule.is_empty());
     let changes = section.has("changes").then(|| read_changes(section.section("changes"), has_rule));
     section.knows("changes");
-    let typed = [&capacity, &dead, &starting].map(|stated| stated.as_ref().map(|stated| stated.key));
-    let flows = [&minimum, &evaporation].map(|stated| stated.as_ref().map(|stated| stated.key));
-    let (capacity, starting, release_capacity) = (capacity?, starting?, release_capacity?);
-    let (demand_key, demand) = demand?;
+    let (capacity, dead, starting, release_capacity) = (capacity?, dead?, starting?, release_capacity?);
+    let (minimum, evaporation, rule) = (minimum?, evaporation?, rule?);
+    let (demand_stated, demand) = demand?;
     let reservoir = Reservoir {
         name: name?,
         capacity_hm3: capacity.value,
-        dead_hm3: dead?.value,
+        dead_hm3: dead.value,
         starting_hm3: starting.value,
-        // An outlet passes as much in every month.
-        release_capacity_hm3_per_day: release_capacity.value[0],
-        minimum_release_hm3_per_day: minimum?.value,
+        release_capacity_hm3_per_day: release_capacity.value,
+        minimum_release_hm3_per_day: minimum.value,
         demand_hm3_per_day: demand,
-        flood_rule: rule?,
-        evaporation_hm3_per_day: evaporation?.value,
+        flood_rule: rule
+            .iter()
+            .map(|(on, stated)| RulePoint { on: *on, not_above_hm3: stated.value })
+            .collect(),
+        evaporation_hm3_per_day: evaporation.value,
         full_share,
     };
     if let Err(faults) = reservoir.check() {
-        let keys = [
-            ("reservoir.capacity_hm3", typed[0]),
-            ("reservoir.dead_storage_hm3", typed[1]),
-            ("reservoir.starting_storage_hm3", typed[2]),
-            ("reservoir.release_capacity", Some(release_capacity.key)),
-            ("reservoir.minimum_release", flows[0]),
-            ("reservoir.demand", demand_key),
-            ("reservoir.evaporation", flows[1]),
+        let mut all = vec![
+            Typed::one("capacity_hm3", &capacity),
+            Typed::one("dead_storage_hm3", &dead),
+            Typed::one("starting_storage_hm3", &starting),
+            Typed::one("release_capacity", &release_capacity),
         ];
-        note_under_typed_keys(section, faults, &keys);
+        let flows = [
+            ("minimum_release", Some(&minimum)),
+            ("demand", demand_stated.as_ref()),
+            ("evaporation", Some(&evaporation)),
+        ];
+        for (of, stated) in flows {
+            all.extend(stated.into_iter().flat_map(|stated| Typed::monthly(section, of, stated)));
+        }
+        for (at, (_, stated)) in rule.iter().enumerate() {
+            let path = format!("flood_space[{at}].");
+            all.push(Typed::one(&format!("{path}storage_not_above_hm3"), stated).below(&path));
+        }
+        note_as_typed(section, faults, &all);
         return None;
     }
     let changes = match changes {
@@ -96,18 +109,6 @@ fn read_keys(section: &mut Section<'_>, is_southern: bool) -> Option<ReservoirTy
         Some(changes) => changes?,
     };
     Some(ReservoirTyped { reservoir, storage_dates: storage_dates?, changes })
-}
-
-/// Notes the faults of a reservoir under the keys that were typed.
-fn note_under_typed_keys(section: &Section<'_>, faults: Vec<Fault>, keys: &[(&str, Option<&'static str>)]) {
-    for mut fault in faults {
-        if let Place::Key(key) = &mut fault.place
-            && let Some((_, Some(typed))) = keys.iter().find(|(of, _)| of == key)
-        {
-            *key = section.path_of(typed);
-        }
-        section.fault(fault);
-    }
 }
 
 fn read_name(section: &mut Section<'_>) -> Option<String> {
@@ -129,7 +130,8 @@ fn read_name(section: &mut Section<'_>) -> Option<String> {
 fn required_volume(section: &mut Section<'_>, keys: [&'static str; 2], what: &str) -> Option<Stated<f64>> {
     if !keys.iter().any(|key| section.has(key)) {
         keys.iter().for_each(|key| section.knows(key));
-        section.missing(keys[0], "a volume", &format!("add it, {what}; or {}", keys[1]));
+        let mend = format!("add {} = ..., {what}; or {}", keys[0], keys[1]);
+        section.missing(keys[0], "a volume", &mend);
         return None;
     }
     section.volume(keys)
@@ -139,41 +141,35 @@ fn volume_or(section: &mut Section<'_>, keys: [&'static str; 2], usual: f64) -> 
     if !keys.iter().any(|key| section.has(key)) {
         keys.iter().for_each(|key| section.knows(key));
         section.default(keys[0], usual);
-        return Some(Stated { key: keys[0], value: usual });
+        return Some(Stated { key: keys[0], typed: usual, value: usual });
     }
     section.volume(keys)
 }
 
-fn required_flow(section: &mut Section<'_>, keys: &[&'static str], what: &str) -> Option<Stated<[f64; 12]>> {
+/// What the outlets pass, as much in every month.
+fn required_outlets(section: &mut Section<'_>) -> Option<Stated<f64>> {
+    let keys = &RELEASE_CAPACITY;
     if !keys.iter().any(|key| section.has(key)) {
         keys.iter().for_each(|key| section.knows(key));
-        section.missing(keys[0], "a flow", &format!("add it, {what}; or {}", keys[1..].join(", ")));
+        let others = keys[1..].join(" or ");
+        let mend = format!("add {} = ..., what all outlets and turbines pass together; or {others}", keys[0]);
+        section.missing(keys[0], "a flow", &mend);
         return None;
     }
-    let flow = section.flow(keys)?;
-    if flow.value.iter().any(|value| *value != flow.value[0]) {
-        section.fault(Fault::key(
-            section.path_of(flow.key),
-            "twelve numbers",
-            "one number",
-            "outlets pass as much in every month",
-        ));
-        return None;
-    }
-    Some(flow)
+    section.even_flow(keys)
 }
 
 fn flow_or_none(section: &mut Section<'_>, keys: &[&'static str]) -> Option<Stated<[f64; 12]>> {
     if !keys.iter().any(|key| section.has(key)) {
         keys.iter().for_each(|key| section.knows(key));
         section.default(keys[0], 0);
-        return Some(Stated { key: keys[0], value: [0.0; 12] });
+        return Some(Stated { key: keys[0], typed: [0.0; 12], value: [0.0; 12] });
     }
     section.flow(keys)
 }
 
-/// A demand on top of the minimum release, or a target that it serves, with the key that was typed; no demand where neither was.
-fn read_demand(section: &mut Section<'_>) -> Option<(Option<&'static str>, Demand)> {
+/// A demand on top of the minimum release, or a target that it serves, with what was typed; no demand where neither was.
+fn read_demand(section: &mut Section<'_>) -> Option<(Option<Stated<[f64; 12]>>, Demand)> {
     let typed = |keys: [&'static str; 4]| keys.into_iter().find(|key| section.has(key));
     match (typed(DEMAND), typed(TARGET)) {
         (Some(demand), Some(target)) => {
@@ -188,11 +184,15 @@ fn read_demand(section: &mut Section<'_>) -> Option<(Option<&'static str>, Deman
         }
         (None, Some(_)) => {
             DEMAND.iter().for_each(|key| section.knows(key));
-            section.flow(&TARGET).map(|stated| (Some(stated.key), Demand::InAll(stated.value)))
+            let stated = section.flow(&TARGET)?;
+            let demand = Demand::InAll(stated.value);
+            Some((Some(stated), demand))
         }
         (Some(_), None) => {
             TARGET.iter().for_each(|key| section.knows(key));
-            section.flow(&DEMAND).map(|stated| (Some(stated.key), Demand::OnTop(stated.value)))
+            let stated = section.flow(&DEMAND)?;
+            let demand = Demand::OnTop(stated.value);
+            Some((Some(stated), demand))
         }
         (None, None) => {
             DEMAND.iter().chain(&TARGET).for_each(|key| section.knows(key));
@@ -202,19 +202,19 @@ fn read_demand(section: &mut Section<'_>) -> Option<(Option<&'static str>, Deman
     }
 }
 
-fn read_rule(sections: Vec<Section<'_>>) -> Option<Vec<RulePoint>> {
-    let points: Vec<Option<RulePoint>> = sections.into_iter().map(read_point).collect();
+fn read_rule(sections: Vec<Section<'_>>) -> Option<Vec<(MonthDay, Stated<f64>)>> {
+    let points: Vec<Option<(MonthDay, Stated<f64>)>> = sections.into_iter().map(read_point).collect();
     points.into_iter().collect()
 }
 
-fn read_point(mut section: Section<'_>) -> Option<RulePoint> {
+fn read_point(mut section: Section<'_>) -> Option<(MonthDay, Stated<f64>)> {
     let on = section.day("on");
     if on.is_none() && !section.has("on") {
         section.missing("on", "a day", "add on = \"11-15\"");
     }
     let not_above = required_volume(&mut section, NOT_ABOVE, "what storage is not to exceed on that day");
     section.finish();
-    Some(RulePoint { on: on?, not_above_hm3: not_above?.value })
+    Some((on?, not_above?))
 }
 
 fn read_dates(section: &mut Section<'_>, is_southern: bool) -> Option<Vec<MonthDay>> {
@@ -229,7 +229,18 @@ fn read_dates(section: &mut Section<'_>, is_southern: bool) -> Option<Vec<MonthD
     };
     let days: Vec<Option<MonthDay>> =
         texts.iter().enumerate().map(|(at, text)| section.parse_day(&format!("{KEY}[{at}]"), text)).collect();
-    days.into_iter().collect()
+    let days: Vec<MonthDay> = days.into_iter().collect::<Option<_>>()?;
+    let repeated = days.iter().enumerate().find(|(at, day)| days[..*at].contains(day));
+    if let Some((at, day)) = repeated {
+        section.fault(Fault::key(
+            section.path_of(&format!("{KEY}[{at}]")),
+            format!("{day} twice"),
+            "each day once",
+            "take one of the two out",
+        ));
+        return None;
+    }
+    Some(days)
 }
 
 fn read_changes(mut section: Section<'_>, has_rule: bool) -> Option<Vec<Change>> {
@@ -280,15 +291,17 @@ fn read_lists(section: &mut Section<'_>, has_rule: bool) -> Option<Vec<Change>> 
     let times = |factor: f64| factor != 1.0 && (0.0..=3.0).contains(&factor);
     let space_is = is_sound("flood_space_times", &space, &times, "factors from 0 to 3");
     let demand_is = is_sound("demand_times", &demand, &times, "factors from 0 to 3");
-    let asks_of_rule = !moved.is_empty() || !space.is_empty();
-    let needs_rule = asks_of_rule && !has_rule;
-    if needs_rule {
-        section.fault(Fault::key(
-            section.path().to_owned(),
-            "changes of a flood-space rule that is not stated",
-            "a [[reservoir.flood_space]]",
-            "state the rule, or leave refill_moved_days and flood_space_times out",
-        ));
+    let mut needs_rule = false;
+    for (key, values) in [("refill_moved_days", &moved), ("flood_space_times", &space)] {
+        if !has_rule && !values.is_empty() {
+            needs_rule = true;
+            section.fault(Fault::key(
+                section.path_of(key),
+                "a change of a flood-space rule that is not stated",
+                "a rule to change, in [[reservoir.flood_space]]",
+                format!("state the rule, or leave {key} out"),
+            ));
+        }
     }
     let all_are = days_are && space_is && demand_is && !needs_rule;
     let moved = moved.into_iter().map(|days| Change::RefillMovedDays(days as i32));

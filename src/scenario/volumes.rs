@@ -24,6 +24,11 @@ fn flow_units() -> [(&'static str, [f64; 12]); 5] {
     ]
 }
 
+/// What one of the unit at a key's end is in hm3 a day of each month.
+fn factors_of(key: &str) -> Option<[f64; 12]> {
+    flow_units().into_iter().find(|(unit, _)| key.ends_with(&format!("_{unit}"))).map(|(_, factors)| factors)
+}
+
 /// Days of a common year's months: 29 February asks for as much as the day before it.
 const DAYS_OF_MONTHS: [f64; 12] = [31.0, 28.0, 31.0, 30.0, 31.0, 30.0, 31.0, 31.0, 30.0, 31.0, 30.0, 31.0];
 
@@ -32,6 +37,8 @@ const DAYS_OF_MONTHS: [f64; 12] = [31.0, 28.0, 31.0, 30.0, 31.0, 30.0, 31.0, 31.
 pub(super) struct Stated<T> {
     /// The key that was typed, with its unit.
     pub key: &'static str,
+    /// What was typed, in the key's unit.
+    pub typed: T,
     /// Its value, in hm3 or hm3 a day.
     pub value: T,
 }
@@ -41,15 +48,15 @@ impl Section<'_> {
     pub fn volume(&mut self, keys: [&'static str; 2]) -> Option<Stated<f64>> {
         let at = self.one_of(&keys)?;
         let typed = self.number(keys[at])?;
-        Some(Stated { key: keys[at], value: typed * volume_units()[at].1 })
+        Some(Stated { key: keys[at], typed, value: typed * volume_units()[at].1 })
     }
 
     /// Volumes, hm3, likewise.
     pub fn volumes(&mut self, keys: [&'static str; 2]) -> Option<Stated<Vec<f64>>> {
         let at = self.one_of(&keys)?;
         let typed = self.numbers(keys[at])?;
-        let value = typed.into_iter().map(|typed| typed * volume_units()[at].1).collect();
-        Some(Stated { key: keys[at], value })
+        let value = typed.iter().map(|typed| typed * volume_units()[at].1).collect();
+        Some(Stated { key: keys[at], typed, value })
     }
 
     /// What flows in a day of each month, hm3, under one of the keys, each with the unit at its end: one number or twelve, January
@@ -57,11 +64,16 @@ impl Section<'_> {
     pub fn flow(&mut self, keys: &[&'static str]) -> Option<Stated<[f64; 12]>> {
         let at = self.one_of(keys)?;
         let typed = self.one_or_monthly(keys[at], "")?;
-        let (_, factors) =
-            flow_units().into_iter().find(|(unit, _)| keys[at].ends_with(&format!("_{unit}")))?;
-        let mut value = typed;
-        value.iter_mut().zip(factors).for_each(|(value, factor)| *value *= factor);
-        Some(Stated { key: keys[at], value })
+        let mut value = factors_of(keys[at])?;
+        value.iter_mut().zip(typed).for_each(|(value, typed)| *value *= typed);
+        Some(Stated { key: keys[at], typed, value })
+    }
+
+    /// A flow that is the same in every month, hm3 a day, likewise: one number.
+    pub fn even_flow(&mut self, keys: &[&'static str]) -> Option<Stated<f64>> {
+        let at = self.one_of(keys)?;
+        let typed = self.number(keys[at])?;
+        Some(Stated { key: keys[at], typed, value: typed * factors_of(keys[at])?[0] })
     }
 
     /// Which of the keys was typed; a fault where more than one was.

@@ -9,6 +9,7 @@ mod calendar;
 mod case;
 mod closed_season;
 mod days;
+mod operations;
 mod ranges;
 mod scores;
 mod seattle;
@@ -23,7 +24,7 @@ use case::Case;
 /// What a case is run through.
 type Runner = fn(&Case);
 
-const RUNNERS: [(&str, Runner); 34] = [
+const RUNNERS: [(&str, Runner); 40] = [
     ("days", days::days),
     ("melt factors", days::melt_factors),
     ("precipitation factor", days::precipitation_factor),
@@ -58,6 +59,12 @@ const RUNNERS: [(&str, Runner); 34] = [
     ("volumes", units::volumes),
     ("water over an area", units::water_over_an_area),
     ("scores", scores::scores),
+    ("flows", operations::flows),
+    ("depths", operations::depths),
+    ("inflow year", operations::inflow_year),
+    ("recession", operations::recession),
+    ("storage-yield", operations::storage_yield),
+    ("shortages", operations::shortages),
 ];
 
 fn run(text: &str) {
@@ -141,4 +148,10 @@ fn trends_of_a_record() {
 #[test]
 fn units_and_volumes() {
     run(include_str!("units.toml"));
+}
+
+/// Flows, routed water, storage and yield, and what shortages come to.
+#[test]
+fn operations() {
+    run(include_str!("operations.toml"));
 }

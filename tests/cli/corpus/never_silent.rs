@@ -87,6 +87,37 @@ count = 300
 years = 30
 mean_change_sd_pct = 8.0
 
+[inflow]
+runoff_fraction = [0.5, 0.5, 0.6, 0.7, 0.7, 0.7, 0.6, 0.5, 0.5, 0.5, 0.5, 0.5]
+recession_days = 4
+year_class_limits_thousand_acre_feet = [10, 20]
+slow = { share = 0.3, recession_days = 60 }
+[inflow.observed]
+file = "inflow.csv"
+date = { column = "date" }
+flow = { column = "inflow", unit = "cfs" }
+missing = ["NA"]
+fit = true
+
+[reservoir]
+name = "Lantern"
+capacity_thousand_acre_feet = 40
+dead_storage_thousand_acre_feet = 5
+starting_storage_thousand_acre_feet = 20
+release_capacity_cfs = 700
+minimum_release_cfs = 10
+release_target_thousand_acre_feet_per_month = [1, 1, 1, 2, 5, 7, 8, 7, 4, 2, 1, 1]
+evaporation_thousand_acre_feet_per_month = 0.1
+storage_dates = ["10-01"]
+full_share = 0.98
+[[reservoir.flood_space]]
+on = "05-01"
+storage_not_above_thousand_acre_feet = 30
+[reservoir.changes]
+refill_moved_days = [-20, 10]
+flood_space_times = [0.5]
+demand_times = [0.9]
+
 [report]
 units = "us"
 "#;
