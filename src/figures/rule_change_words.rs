@@ -7,6 +7,9 @@ use crate::operation::Change;
 /// What is told of rules: the measure that stands in titles and sentences.
 pub(super) const RELIABILITY: &str = "reliability_volume_share";
 
+/// A smaller share of what is taken is nothing: half a percent.
+pub const LEAST_BROUGHT_BACK: f64 = 0.005;
+
 /// `as stated`, `refill 30 days earlier`, `flood space × 0.5`, `demand × 0.9`.
 pub fn change_in_words(change: Change) -> String {
     let factor = |factor: f64| {
@@ -38,7 +41,7 @@ pub(super) fn changed<'a>(of: &'a RuleChange, name: &str, at: usize) -> Option<&
 }
 
 /// The change that brings back most of what warming takes of reliability by volume at a level, and how much: of those that move the
-/// refill, or, where none does, of all. Nothing where warming takes next to nothing.
+/// refill, or, where none of them brings back anything, of all. Nothing where warming takes next to nothing.
 pub fn brought_back(operations: &Operations, at: usize) -> Option<(Change, Ranged)> {
     let found = |of: &RuleChange| Some((of.change, changed(of, RELIABILITY, at)?.brought_back?));
     let most = |moves_refill: bool| {
@@ -48,5 +51,5 @@ pub fn brought_back(operations: &Operations, at: usize) -> Option<(Change, Range
             .filter(|of| !moves_refill || matches!(of.change, Change::RefillMovedDays(_)));
         asked.filter_map(found).max_by(|a, b| a.1.value.total_cmp(&b.1.value))
     };
-    most(true).or_else(|| most(false))
+    most(true).filter(|(_, back)| back.value >= LEAST_BROUGHT_BACK).or_else(|| most(false))
 }

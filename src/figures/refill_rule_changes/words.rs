@@ -2,7 +2,9 @@
 
 use super::super::ensemble;
 use super::super::labels::{counted, grouped, level, sentence};
-use super::super::rule_change_words::{RELIABILITY, brought_back, change_in_words, changed};
+use super::super::rule_change_words::{
+    LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words, changed,
+};
 use super::super::shown::{Shown, name};
 use super::signed_size;
 use crate::findings::{Findings, Operations, Ranged};
@@ -106,12 +108,11 @@ fn title(
     let falls =
         format!("At {place}, reliability by volume falls from {} to {} %", tenths(reference), tenths(warmed));
     let rule = change_in_words(change);
+    let brings = |what: &str| format!("{falls}; {rule} brings back {what}{}", range(found));
     Some(match found.value {
-        ..0.005 => format!("{falls}; none of the changes tried brings any of that back"),
-        0.995.. => format!("{falls}; {rule} brings back all of that and more{}", range(found)),
-        value => {
-            format!("{falls}; {rule} brings back {} % of that{}", signed_size(100.0 * value), range(found))
-        }
+        ..LEAST_BROUGHT_BACK => format!("{falls}; none of the changes tried brings any of that back"),
+        0.995.. => brings("all of that"),
+        value => brings(&format!("{} % of that", signed_size(100.0 * value))),
     })
 }
 

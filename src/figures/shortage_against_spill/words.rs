@@ -158,13 +158,14 @@ fn title(
         Across::Spill => volume(units, value),
         Across::Encroached => grouped(value, 1),
     });
-    let of_cost = if cost_before == cost_after {
-        format!("{cost_name} stay{} at {cost_before}", if across == Across::Spill { "s" } else { "" })
-    } else {
-        format!("{cost_name} from {cost_before} to {cost_after}")
-    };
     let cost_unit = if across == Across::Spill { format!(" {unit}") } else { String::new() };
+    let of_cost = if cost_before == cost_after {
+        let stay = if across == Across::Spill { "stays" } else { "stay" };
+        format!("; {cost_name} {stay} at {cost_after}")
+    } else {
+        format!(" and {cost_name} from {cost_before} to {cost_after}")
+    };
     Some(format!(
-        "{place}, {rule} takes shortage from {before} to {after} {unit} a year; {of_cost}{cost_unit} a year"
+        "{place}, {rule} takes shortage from {before} to {after} {unit} a year{of_cost}{cost_unit} a year"
     ))
 }

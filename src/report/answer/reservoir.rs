@@ -3,7 +3,7 @@
 use super::super::numbers::fixed;
 use super::super::reader::Reader;
 use super::telling_level;
-use crate::figures::{brought_back, change_in_words};
+use crate::figures::{LEAST_BROUGHT_BACK, brought_back, change_in_words};
 use crate::findings::{Findings, Judged, judged};
 use crate::season::Outcome;
 
@@ -40,7 +40,7 @@ pub(super) fn reservoir(findings: &Findings, cause: &str, reader: Reader) -> Vec
         let supplied = format!(
             "Under the stated rules the reservoir's reliability by volume, the share of demand that is supplied, {how}; {against}."
         );
-        let back = brought_back(operations, at).filter(|(_, back)| back.value >= 0.005).map(|(change, back)| {
+        let back = brought_back(operations, at).filter(|(_, back)| back.value >= LEAST_BROUGHT_BACK).map(|(change, back)| {
             let rule = change_in_words(change);
             format!("{} would bring back {} % of that.", crate::figures::sentence(&rule), fixed(100.0 * back.value, 0))
         });

@@ -5,7 +5,7 @@ use super::super::super::numbers::{DASH, counted, fixed};
 use super::super::super::reader::Reader;
 use super::super::super::study::Study;
 use super::super::{Figures, levels};
-use crate::figures::{Part, brought_back, change_in_words};
+use crate::figures::{LEAST_BROUGHT_BACK, Part, brought_back, change_in_words};
 use crate::findings::{Operations, RuleChange};
 use maud::{Markup, html};
 
@@ -40,7 +40,7 @@ fn told(found: &Operations, at: usize, place: String) -> String {
         }
         _ => String::new(),
     };
-    if back.value < 0.005 {
+    if back.value < LEAST_BROUGHT_BACK {
         return format!(
             "At {place}, none of the changes brings back any of the reliability by volume that warming takes."
         );
