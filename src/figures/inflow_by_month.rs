@@ -3,7 +3,7 @@
 mod words;
 
 use super::axes::AmountTicks;
-use super::labels::between_levels;
+use super::labels::grouped;
 use super::level_lines::{EndName, TO_NAME_PX, line, marked, names_at_ends, widest};
 use super::page::Paragraphs;
 use super::scales;
@@ -68,8 +68,9 @@ fn median_pct(month: &Month<'_>, at: usize) -> Option<f64> {
 fn outweighs(found: &MeasureFindings, units: UnitSystem) -> String {
     match judged(found.outweighs, found.outweighs_range) {
         Judged::Outweighs { level_c, .. } => {
-            let said = between_levels(units, level_c);
-            said.split(' ').next().unwrap_or_default().to_owned()
+            let warming = units.warming().of(level_c);
+            let sign = if warming < 0.0 { "\u{2212}" } else { "+" };
+            format!("{sign}{}", grouped(warming.abs(), 1))
         }
         Judged::DoesNot { .. } => "no".to_owned(),
         Judged::CannotTell { .. } => "?".to_owned(),

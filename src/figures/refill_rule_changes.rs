@@ -9,7 +9,7 @@ use super::page::Paragraphs;
 use super::rule_change_words::{RELIABILITY, change_in_words, changed, measure};
 use super::sheet::{Drawn, HPos, Plot, Px, Sheet, Stroke, VPos};
 use super::shown::Shown;
-use super::theme::{BAND, EDGE, LABEL, MARGIN_PX, NAME, NOTE, WIDTH_PX};
+use super::theme::{EDGE, LABEL, MARGIN_PX, NAME, NOTE, WIDTH_PX};
 use super::value_ticks::ValueTicks;
 use super::{Figure, Part, Setting, Svg};
 use crate::findings::{Findings, Operations};
@@ -124,10 +124,9 @@ fn paint(
     sheet.group("rules", || {
         for (at, rule) in rules.iter().enumerate() {
             let y = row_top(at) + row_px / 2.0;
-            if at % 2 == 0 {
-                sheet.block((MARGIN_PX, row_top(at)), (WIDTH_PX - MARGIN_PX, row_top(at) + row_px), BAND)?;
-            }
-            sheet.write(rule, (MARGIN_PX + 6.0, y), NAME, HPos::Left, VPos::Center)?;
+            let across = [(MARGIN_PX, row_top(at)), (WIDTH_PX - MARGIN_PX, row_top(at))];
+            sheet.line(&across, Stroke::solid(EDGE, 0.6))?;
+            sheet.write(rule, (MARGIN_PX, y), NAME, HPos::Left, VPos::Center)?;
         }
         Ok(())
     })?;

@@ -5,7 +5,7 @@ use crate::findings::{ChangedLevel, ChangedMeasure, Operations, Ranged, RuleChan
 use crate::operation::Change;
 
 /// What is told of rules: the measure that stands in titles and sentences.
-pub(super) const RELIABILITY: &str = "reliability_volume_share";
+pub const RELIABILITY: &str = "reliability_volume_share";
 
 /// A smaller share of what is taken is nothing: half a percent.
 pub const LEAST_BROUGHT_BACK: f64 = 0.005;

@@ -4,7 +4,7 @@ mod places;
 mod words;
 
 use super::axes::AmountTicks;
-use super::level_lines::{EndName, TO_NAME_PX, line, marked, names_at_ends, widest};
+use super::level_lines::{Marked, line, marked, row};
 use super::marks::marker;
 use super::page::Paragraphs;
 use super::rule_change_words::changed;
@@ -16,7 +16,7 @@ use super::{Figure, Part, Setting, Svg};
 use crate::findings::{Findings, Operations};
 use crate::operation::Change;
 use crate::units::UnitSystem;
-use places::{number_places, numbered};
+use places::{Obstacles, numbered};
 use words::Words;
 
 /// The figure.
@@ -135,20 +135,16 @@ fn paint(
     let highest = |axis: usize| of_levels.iter().flatten().map(|point| point.at[axis]).fold(0.0, f64::max);
     let [right_ticks, up_ticks] = [0, 1].map(|axis| AmountTicks::up_to(highest(axis), STEPS));
     let left = MARGIN_PX + scales::width(&up_ticks) + 14.0;
-    let names = WIDTH_PX - MARGIN_PX - widest(&levels);
-    let right = names - TO_NAME_PX - 14.0;
-    let top = MARGIN_PX + heading.height() + 46.0;
+    let right = WIDTH_PX - MARGIN_PX;
+    let names = MARGIN_PX + heading.height() + 26.0;
+    let top = names + 46.0;
     let bottom = top + PLOT_PX;
     let below = bottom + 58.0;
     let sheet = Sheet::new(below + key.height() + MARGIN_PX)?;
-    // Points at 0 keep clear of the axes.
-    let (inner_left, inner_right) = (left + 12.0, right - 10.0);
-    let plot = sheet.plot(
-        (inner_left, top),
-        (inner_right, bottom - 8.0),
-        0.0..right_ticks.top(),
-        0.0..up_ticks.top(),
-    )?;
+    // Marks at 0 keep clear of the axis.
+    let inner = [left + 12.0, right - 12.0];
+    let plot =
+        sheet.plot((inner[0], top), (inner[1], bottom), 0.0..right_ticks.top(), 0.0..up_ticks.top())?;
     let place = |point: &Point| -> Px { plot.at(point.at[0], point.at[1]) };
 
     heading.write(&sheet, MARGIN_PX)?;
@@ -157,36 +153,43 @@ fn paint(
         scales::amounts_upwards(&sheet, &plot, &up_ticks, left)?;
         scales::rightwards(&sheet, &plot, &right_ticks, bottom)?;
         sheet.write(&words.up, (MARGIN_PX, top - 18.0), NAME, HPos::Left, VPos::Bottom)?;
-        let across = (inner_right, bottom + 10.0 + 1.4 * LABEL.leading());
+        let across = (inner[1], bottom + 10.0 + 1.4 * LABEL.leading());
         sheet.write(&words.right, across, NAME, HPos::Right, VPos::Top)
     })?;
-    let mut ends = Vec::new();
-    let all: Vec<Px> = of_levels.iter().flatten().map(place).collect();
-    let mut taken: Vec<[f64; 4]> = Vec::new();
-    for (level, points) in levels.into_iter().zip(&of_levels) {
-        let line_of: Vec<Px> = joined(points).into_iter().map(place).collect();
+    let mut obstacles = Obstacles::new([left + 2.0, top - 10.0, right, bottom - 2.0]);
+    let lines: Vec<Vec<Px>> =
+        of_levels.iter().map(|points| joined(points).into_iter().map(place).collect()).collect();
+    of_levels.iter().flatten().for_each(|point| obstacles.add_mark(place(point)));
+    lines.iter().for_each(|line| obstacles.add_line(line));
+    for ((level, points), joined) in levels.iter().zip(&of_levels).zip(&lines) {
         sheet.group("level", || {
-            line(&sheet, &line_of, level.marking)?;
-            let others = points
-                .iter()
-                .filter(|point| matches!(point.change, Change::FloodSpaceTimes(_) | Change::DemandTimes(_)));
-            others.into_iter().try_for_each(|point| marker(&sheet, place(point), level.marking))
+            line(&sheet, joined, level.marking)?;
+            points.iter().try_for_each(|point| marker(&sheet, place(point), level.marking))
         })?;
-        if words.numbered.contains(&level.at) {
-            let own: Vec<(usize, Px)> = points.iter().map(|point| (point.number, place(point))).collect();
-            let within = [left + 2.0, top - 8.0, right, bottom - 2.0];
-            for (text, at) in number_places(&numbered(&own), &all, &mut taken, within) {
+    }
+    // A level is named where its line ends; where one of them has no room there, all are named above.
+    let mut place_name = |(level, line): (&Marked, &Vec<Px>)| {
+        let ends = [line.last(), line.first()].into_iter().flatten();
+        ends.copied().find_map(|end| obstacles.beside(&level.name, NAME, end))
+    };
+    let beside: Option<Vec<Px>> = levels.iter().zip(&lines).map(&mut place_name).collect();
+    sheet.group("levels", || match &beside {
+        Some(places) => levels
+            .iter()
+            .zip(places)
+            .try_for_each(|(level, at)| sheet.write(&level.name, *at, NAME, HPos::Center, VPos::Center)),
+        None => row(&sheet, &levels, (MARGIN_PX, names)),
+    })?;
+    let numbered_levels =
+        levels.iter().zip(&of_levels).filter(|(level, _)| words.numbered.contains(&level.at));
+    for (_, points) in numbered_levels {
+        let own: Vec<(usize, Px)> = points.iter().map(|point| (point.number, place(point))).collect();
+        for (text, at) in numbered(&own) {
+            if let Some(at) = obstacles.beside(&text, LABEL, at) {
                 sheet.group("rule", || sheet.write(&text, at, LABEL, HPos::Center, VPos::Center))?;
             }
         }
-        let farthest = line_of.iter().max_by(|a, b| a.0.total_cmp(&b.0));
-        ends.extend(farthest.map(|end| EndName {
-            end: *end,
-            name: level.name,
-            marking: Some(level.marking),
-        }));
     }
-    sheet.group("levels", || names_at_ends(&sheet, ends, [top, bottom], names))?;
     key.write(&sheet, below)?;
     Ok(sheet.document(FIGURE.slug, &words.title, &words.description))
 }

@@ -1,12 +1,14 @@
-//! Where the numbers of the rules stand: beside their marks, on no other mark and no other number.
+//! Where names and numbers stand: beside their marks, on no other mark, no line and no other text.
 
 use super::super::sheet::Px;
-use super::super::theme::LABEL;
+use super::super::theme::Lettering;
 
 /// Marks nearer than this are one, px.
 const SAME_PX: f64 = 4.0;
-/// Half of a mark, px.
+/// Half of a mark and of a line, and how densely a line is looked at, px.
 const MARK_PX: f64 = 6.0;
+const LINE_PX: f64 = 1.5;
+const STEP_PX: f64 = 3.0;
 /// How far from its mark a number may stand, px.
 const AWAY_PX: [f64; 3] = [13.0, 20.0, 28.0];
 /// Which ways, the first that is free.
@@ -27,51 +29,79 @@ pub(super) fn numbered(points: &[(usize, Px)]) -> Vec<(String, Px)> {
     groups.into_iter().map(|(numbers, at)| (said(numbers), at)).collect()
 }
 
-/// The middle of each text; one that finds no free place is left out. `taken` are the boxes of those before.
-pub(super) fn number_places(
-    texts: &[(String, Px)],
-    marks: &[Px],
-    taken: &mut Vec<[f64; 4]>,
-    [left, top, right, bottom]: [f64; 4],
-) -> Vec<(String, Px)> {
-    let mut placed = Vec::new();
-    for (text, (x, y)) in texts {
-        let (half_width, half_height) = (LABEL.width(text) / 2.0 + 1.0, LABEL.size_px / 2.0);
-        let ways = AWAY_PX.iter().flat_map(|away| WAYS.iter().map(move |way| (*away, *way)));
-        let free = ways
-            .map(|(away, (across, down))| (x + across * (away + half_width - 5.0), y + down * away))
-            .map(|(x, y)| ((x, y), [x - half_width, y - half_height, x + half_width, y + half_height]))
-            .find(|(_, [l, t, r, b])| {
-                let is_inside = *l >= left && *t >= top && *r <= right && *b <= bottom;
-                let on_mark = marks.iter().any(|(x, y)| {
-                    *l < x + MARK_PX && x - MARK_PX < *r && *t < y + MARK_PX && y - MARK_PX < *b
-                });
-                let on_text = taken.iter().any(|[l2, t2, r2, b2]| l < r2 && l2 < r && t < b2 && t2 < b);
-                is_inside && !on_mark && !on_text
-            });
-        if let Some((at, bounds)) = free {
-            taken.push(bounds);
-            placed.push((text.clone(), at));
+/// What a text must not lie on: marks, lines, and texts before it.
+pub(super) struct Obstacles {
+    /// Places, and how far around each no text may come, px.
+    spots: Vec<(Px, f64)>,
+    texts: Vec<[f64; 4]>,
+    /// Left, top, right, bottom of what texts may fill.
+    within: [f64; 4],
+}
+
+impl Obstacles {
+    pub fn new(within: [f64; 4]) -> Self {
+        Self { spots: Vec::new(), texts: Vec::new(), within }
+    }
+
+    /// A mark stands there.
+    pub fn add_mark(&mut self, at: Px) {
+        self.spots.push((at, MARK_PX));
+    }
+
+    /// A line runs through these places.
+    pub fn add_line(&mut self, places: &[Px]) {
+        for pair in places.windows(2) {
+            let [(x, y), (to_x, to_y)] = [pair[0], pair[1]];
+            let steps = (libm::hypot(to_x - x, to_y - y) / STEP_PX).ceil().max(1.0);
+            for step in 0..=steps as usize {
+                let part = step as f64 / steps;
+                self.spots.push(((x + part * (to_x - x), y + part * (to_y - y)), LINE_PX));
+            }
         }
     }
-    placed
+
+    /// The middle of a text beside a place, which it takes; nothing where there is no room.
+    pub fn beside(&mut self, text: &str, lettering: Lettering, (x, y): Px) -> Option<Px> {
+        let (half_width, half_height) = (lettering.width(text) / 2.0 + 1.0, lettering.size_px / 2.0);
+        let [left, top, right, bottom] = self.within;
+        let ways = AWAY_PX.iter().flat_map(|away| WAYS.iter().map(move |way| (*away, *way)));
+        let places = ways.map(|(away, (across, down))| {
+            let (x, y) = (x + across * (away + half_width - 5.0), y + down * away);
+            ((x, y), [x - half_width, y - half_height, x + half_width, y + half_height])
+        });
+        let is_free = |(_, [l, t, r, b]): &(Px, [f64; 4])| {
+            let is_inside = *l >= left && *t >= top && *r <= right && *b <= bottom;
+            let on_spot = self.spots.iter().any(|((x, y), around)| {
+                *l < x + around && x - around < *r && *t < y + around && y - around < *b
+            });
+            let on_text = self.texts.iter().any(|[l2, t2, r2, b2]| l < r2 && l2 < r && t < b2 && t2 < b);
+            is_inside && !on_spot && !on_text
+        };
+        let (at, bounds) = { places }.find(is_free)?;
+        self.texts.push(bounds);
+        Some(at)
+    }
 }
 
 #[cfg(test)]
 mod tests {
+    use super::super::super::theme::LABEL;
     use super::*;
 
-    /// By hand: two marks on each other are told as one, above; one beside them goes below, since its number would lie on theirs.
+    /// By hand: two marks on each other are told as one, above; one beside them goes below, since above its number would lie on theirs;
+    /// where a line runs above, the number goes below.
     #[test]
     fn numbers_stand_beside_their_marks_and_apart() {
-        let texts = numbered(&[(1, (50.0, 50.0)), (2, (51.0, 50.0)), (3, (58.0, 50.0))]);
+        let marks = [(1, (50.0, 50.0)), (2, (51.0, 50.0)), (3, (58.0, 50.0))];
+        let texts = numbered(&marks);
         assert_eq!(texts.iter().map(|(text, _)| text.as_str()).collect::<Vec<_>>(), ["1, 2", "3"]);
-        let marks = [(50.0, 50.0), (51.0, 50.0), (58.0, 50.0)];
-        let mut taken = Vec::new();
-        let placed = number_places(&texts, &marks, &mut taken, [0.0, 0.0, 100.0, 100.0]);
-        assert_eq!(placed[0].1, (50.0, 37.0));
-        assert_eq!(placed[1].1, (58.0, 63.0));
-        let nowhere = number_places(&texts, &marks, &mut Vec::new(), [49.0, 49.0, 51.0, 51.0]);
-        assert!(nowhere.is_empty(), "{nowhere:?}");
+        let mut obstacles = Obstacles::new([0.0, 0.0, 100.0, 100.0]);
+        marks.iter().for_each(|(_, at)| obstacles.add_mark(*at));
+        assert_eq!(obstacles.beside("1, 2", LABEL, texts[0].1), Some((50.0, 37.0)));
+        assert_eq!(obstacles.beside("3", LABEL, texts[1].1), Some((58.0, 63.0)));
+        let mut below_line = Obstacles::new([0.0, 0.0, 100.0, 100.0]);
+        below_line.add_line(&[(0.0, 40.0), (100.0, 40.0)]);
+        assert_eq!(below_line.beside("1", LABEL, (50.0, 50.0)), Some((50.0, 63.0)));
+        assert_eq!(Obstacles::new([49.0, 49.0, 51.0, 51.0]).beside("1", LABEL, (50.0, 50.0)), None);
     }
 }

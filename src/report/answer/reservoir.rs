@@ -3,7 +3,7 @@
 use super::super::numbers::fixed;
 use super::super::reader::Reader;
 use super::telling_level;
-use crate::figures::{LEAST_BROUGHT_BACK, brought_back, change_in_words};
+use crate::figures::{LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words};
 use crate::findings::{Findings, Judged, judged};
 use crate::season::Outcome;
 
@@ -13,7 +13,7 @@ pub(super) fn reservoir(findings: &Findings, cause: &str, reader: Reader) -> Vec
     let at = telling_level(findings);
     let sentences = at.and_then(|at| {
         let operations = findings.operations.as_ref()?;
-        let measure = operations.measure("reliability_volume_share")?;
+        let measure = operations.measure(RELIABILITY)?;
         let [reference, warmed] = [findings.reference, at].map(|at| measure.levels[at].periods.q50);
         let (Outcome::Value(before), Outcome::Value(after)) = (reference, warmed) else { return None };
         let place = reader.level(findings.levels_c[at]);

@@ -14,7 +14,7 @@ use super::Figures;
 use super::levels::{names, undefined};
 use super::parts::{Group, part};
 use crate::findings::{Findings, Judged, LevelFindings, MeasureFindings, Operations, Ranged, judged};
-use crate::season::Kind;
+use crate::season::{Kind, Outcome};
 use maud::{Markup, html};
 
 /// The parts that there is something to say in; none where the scenario routes no water.
@@ -72,7 +72,7 @@ fn cell(reader: Reader, kind: Kind, at: &LevelFindings) -> Markup {
         said.split(' ').next().unwrap_or_default().to_owned()
     };
     html! {
-        (reader.outcome(at.periods.q50, kind))
+        (value(reader, kind, at.periods.q50))
         @if let Some(shift) = at.shift {
             br;
             (reader.change_of(kind, shift.median.value, None))
@@ -120,8 +120,8 @@ fn sentence(findings: &Findings, of: &MeasureFindings, at: usize, reader: Reader
     Some(format!(
         "{}: {} at the reference, {} at {} (median change {}); {against}.",
         crate::figures::sentence(&of.measure.title),
-        reader.outcome(reference.periods.q50, kind),
-        reader.outcome(warmed.periods.q50, kind),
+        value(reader, kind, reference.periods.q50),
+        value(reader, kind, warmed.periods.q50),
         reader.level(warmed.level_c),
         reader.change_of(kind, shift, None),
     ))
@@ -140,6 +140,14 @@ fn ranged(of: Option<Ranged>, said: impl Fn(f64) -> String) -> String {
             format!("{} ({} to {})", said(value), said(low), said(high))
         }
         Some(of) => said(of.value),
+    }
+}
+
+/// A measure's value in words; shares near all of something, as of reliability, to a tenth of a percent.
+fn value(reader: Reader, kind: Kind, of: Outcome) -> String {
+    match of {
+        Outcome::Value(share) if kind == Kind::Share && share > 0.9 => format!("{} %", tenths(share)),
+        _ => reader.outcome(of, kind),
     }
 }
 

@@ -24,7 +24,7 @@ pub(super) fn section(study: &Study<'_>, found: &Operations, figures: &Figures<'
         @if let Some(at) = telling_level(findings) { @if let Some(said) = told(outlook, findings.reference, at, reader) { p { (said) } } }
         (figures.of(Part::Outlook))
         (table(study, outlook, reader))
-        p { "The old line is the straight line through the reference's years, used at another level: what it tells too much of is missing from the reservoir later." }
+        p { "The old line is the straight line through the reference's years, used at another level. Where it tells too much, that water does not come." }
     } }
 }
 

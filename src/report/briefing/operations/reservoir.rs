@@ -3,13 +3,12 @@
 use super::super::super::answer::telling_level;
 use super::super::super::study::Study;
 use super::super::Figures;
-use crate::figures::Part;
+use crate::figures::{Part, RELIABILITY};
 use crate::findings::{MeasureFindings, Operations};
 use maud::{Markup, html};
 
 /// What is told in sentences, the most telling first.
-const TOLD: [&str; 4] =
-    ["reliability_volume_share", "storage_year_end_hm3", "years_not_filled_share", "spill_hm3"];
+const TOLD: [&str; 4] = [RELIABILITY, "storage_year_end_hm3", "years_not_filled_share", "spill_hm3"];
 
 pub(super) fn section(study: &Study<'_>, found: &Operations, figures: &Figures<'_>) -> Markup {
     let (findings, reader) = (study.findings, study.reader);
@@ -23,7 +22,7 @@ pub(super) fn section(study: &Study<'_>, found: &Operations, figures: &Figures<'
             @if pool.not_above_hm3.is_empty() { "No space is kept for floods. " }
             @else { "Its flood-space rule says what storage is not to exceed on a day. " }
             "Day by day it takes in the " (found.word) "; then evaporation is taken, the minimum release paid, storage above the flood-space rule let go as far \
-             as the outlets pass it, and demand served from that and from what else lies above the outlets. What does not fit spills."
+             as the outlets pass it, and demand served from that and from what else lies above the outlets. What does not fit spills. What is left as the water year ends is the carry-over for the next."
         }
         p {
             "Assumed: this order of priority; rules, demand and evaporation are the same at every level; the reservoir is run day by day without foresight, so \

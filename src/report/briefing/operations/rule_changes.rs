@@ -5,8 +5,10 @@ use super::super::super::numbers::{DASH, counted, fixed};
 use super::super::super::reader::Reader;
 use super::super::super::study::Study;
 use super::super::{Figures, levels};
-use crate::figures::{LEAST_BROUGHT_BACK, Part, brought_back, change_in_words};
+use super::value;
+use crate::figures::{LEAST_BROUGHT_BACK, Part, RELIABILITY, brought_back, change_in_words};
 use crate::findings::{Operations, RuleChange};
+use crate::season::Kind;
 use maud::{Markup, html};
 
 pub(super) fn section(study: &Study<'_>, found: &Operations, figures: &Figures<'_>) -> Markup {
@@ -18,21 +20,25 @@ pub(super) fn section(study: &Study<'_>, found: &Operations, figures: &Figures<'
              flood-space rule rises, it rises so many days sooner or later; flood space and demand: times a factor. What less space \
              for floods would mean in a flood is not looked at: that takes a study of floods."
         }
-        @if let Some(at) = telling_level(findings) { p { (told(found, at, reader.level(findings.levels_c[at]))) } }
+        @if let Some(at) = telling_level(findings) { p { (told(found, [findings.reference, at], &reader.level(findings.levels_c[at]), reader)) } }
         (figures.of(Part::RuleChanges))
         @let measures = found.rule_changes.first().map_or(0, |of| of.measures.len());
         @for measure in 0..measures { (table(study, found, measure, reader)) }
     } }
 }
 
-/// What comes back at a level.
-fn told(found: &Operations, at: usize, place: String) -> String {
+/// What comes back at a level, and what the same change would do at the reference.
+fn told(found: &Operations, [reference, at]: [usize; 2], place: &str, reader: Reader) -> String {
     let Some((change, back)) = brought_back(found, at) else {
         return format!(
             "At {place}, warming takes next to nothing of the reliability by volume, so that there is nothing to bring back."
         );
     };
-    let rule = change_in_words(change);
+    if back.value < LEAST_BROUGHT_BACK {
+        return format!(
+            "At {place}, none of the changes brings back any of the reliability by volume that warming takes."
+        );
+    }
     let percent = |share: f64| format!("{} %", fixed(100.0 * share, 0));
     let range = match (back.q05, back.q95) {
         (Some(low), Some(high)) => {
@@ -40,14 +46,16 @@ fn told(found: &Operations, at: usize, place: String) -> String {
         }
         _ => String::new(),
     };
-    if back.value < LEAST_BROUGHT_BACK {
-        return format!(
-            "At {place}, none of the changes brings back any of the reliability by volume that warming takes."
-        );
-    }
+    let of_change = found.rule_changes.iter().find(|of| of.change == change);
+    let measure = of_change.and_then(|of| of.measures.iter().find(|of| of.measure.name == RELIABILITY));
+    let shift = measure.and_then(|of| of.levels.get(reference)?.shift);
+    let at_reference = shift.map_or(String::new(), |shift| {
+        let change = reader.change_of(Kind::Share, shift.median.value, None);
+        format!("; at the reference the same change of rules makes {change}")
+    });
     format!(
-        "At {place}, {rule} brings back {}{range} of the reliability by volume that warming takes; the same change at the reference \
-         would raise it, too.",
+        "At {place}, {} brings back {}{range} of the reliability by volume that warming takes{at_reference}.",
+        change_in_words(change),
         percent(back.value)
     )
 }
@@ -64,7 +72,7 @@ fn table(study: &Study<'_>, found: &Operations, measure: usize, reader: Reader) 
             return html! { (DASH) };
         };
         html! {
-            (reader.outcome(at.periods.q50, kind))
+            (value(reader, kind, at.periods.q50))
             @if let Some(shift) = at.shift { br; (reader.change_of(kind, shift.median.value, None)) }
             @if let Some(back) = at.brought_back { br; (fixed(100.0 * back.value, 0)) " % back" }
         }
