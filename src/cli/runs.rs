@@ -10,13 +10,15 @@ use super::progress::Progress;
 use super::ready::Ready;
 use super::rule_panel::rule_panel;
 use super::surface::warmed;
+use crate::calendar::{COMMON_DATES, WaterYearStart};
 use crate::ensemble::{BasinSeasons, Halt, LevelGroup, Plan, Seasons, SweBins, Watch, run, run_records};
 use crate::findings::{
     ByYear, ByYearQuestions, Findings, Operations, OperationsQuestions, OtherChange, ParameterSpread,
-    Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, RecordOdds, Refit, RefitOdds, Runs,
+    PoolShown, Questions, REALIZATIONS_OF_A_RECORD, RESAMPLED_RECORDS, RecordOdds, Refit, RefitOdds, Runs,
     TIMES_ASSUMED, answer, warm_year_biases,
 };
 use crate::perturb::{Generator, MeanChange, TemperatureHeld};
+use crate::reservoir::Reservoir;
 use crate::season::Measures;
 use crate::snow::{OpenLedger, Path};
 use crate::weather::Series;
@@ -164,6 +166,10 @@ pub(super) fn find(ready: &Ready, measures: &Measures, progress: &Progress) -> R
 fn operations(ready: &Ready, study: &Seasons, held: &Seasons) -> Option<Operations> {
     let (scenario, operation) = (&ready.scenario, ready.operation.as_ref()?);
     let limits = scenario.inflow.as_ref().map(|inflow| inflow.year_class_limits_hm3.as_slice());
+    let pool = operation
+        .reservoir
+        .as_ref()
+        .map(|reservoir| pool_shown(reservoir, operation.settings.water_year_starts));
     let questions = OperationsQuestions {
         levels_c: &scenario.warming.levels_c,
         reference: scenario.warming.reference,
@@ -171,10 +177,27 @@ fn operations(ready: &Ready, study: &Seasons, held: &Seasons) -> Option<Operatio
         seed: scenario.seed,
         inflow_is_observed: operation.settings.is_observed,
         year_class_limits_hm3: limits.unwrap_or_default(),
+        word: operation.settings.word(),
         reservoir: operation.reservoir.as_ref().map(|reservoir| reservoir.name.as_str()),
+        pool: pool.as_ref(),
         headline: (&study.basin.measures[0], study.basin.years.index_axis(Axis(1), 0)),
     };
     Some(Operations::of(study.operated.as_ref()?, held.operated.as_ref(), &questions))
+}
+
+/// What figures and pages show of the reservoir itself.
+fn pool_shown(reservoir: &Reservoir, starts: WaterYearStart) -> PoolShown {
+    let (rule, first) = (reservoir.rule(), starts.0.day_of_common_year() as usize - 1);
+    let of_day = |day: usize| rule.not_above_hm3((first + day) % COMMON_DATES);
+    PoolShown {
+        capacity_hm3: reservoir.capacity_hm3,
+        dead_hm3: reservoir.dead_hm3,
+        not_above_hm3: if rule.keeps_space(reservoir.capacity_hm3) {
+            (0..COMMON_DATES).map(of_day).collect()
+        } else {
+            Vec::new()
+        },
+    }
 }
 
 /// Watches for the wish to stop alone: runs that are too many and too short to count on a bar.

@@ -5,6 +5,7 @@ mod by_year;
 mod comparisons;
 mod days;
 mod fits;
+mod operated;
 mod records;
 mod rules;
 mod studies;
@@ -220,6 +221,7 @@ fn figures_without_their_measures_are_not_drawn() {
         by_year: None,
         record: None,
         generator: None,
+        operations: None,
         ..PLAIN.findings()
     };
     assert!(FIGURES.iter().all(|figure| (figure.draw)(&findings, &setting).is_none()));

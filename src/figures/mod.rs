@@ -13,7 +13,9 @@ mod dry_and_warm;
 mod fits;
 mod generator_sheet;
 mod headline;
+mod inflow_by_month;
 mod labels;
+mod level_lines;
 mod low_snow_odds;
 mod marks;
 mod melt_timing;
@@ -24,11 +26,16 @@ mod parameter_profiles;
 mod reading;
 mod record_precipitation;
 mod record_years;
+mod refill_rule_changes;
 mod response_surface;
+mod rule_change_words;
 mod rule_panel;
 mod scales;
+mod seasonal_outlook;
 mod sheet;
+mod shortage_against_spill;
 mod shown;
+mod storage_through_year;
 mod survey_error;
 mod swe_by_band;
 mod swe_by_level;
@@ -51,6 +58,7 @@ mod colour_sight;
 pub use fits::{DrawnFit, FIT_FIGURES, FIT_SITE_FIGURES, FitFigure, FitPart, FitSiteFigure, of_fit};
 pub use labels::{cause, sentence};
 pub use one_slide::PLANNING_AID;
+pub use rule_change_words::{LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words};
 pub use rule_panel::rule_in_words;
 pub use text_width::text_width;
 
@@ -91,6 +99,14 @@ pub enum Part {
     Together,
     /// What do single years say of it?
     Years,
+    /// When does the water come to the reservoir?
+    Inflow,
+    /// What does the reservoir hold?
+    Reservoir,
+    /// What would other rules change of it?
+    RuleChanges,
+    /// What does the snow foretell?
+    Outlook,
     /// Is it the model's choice?
     Rules,
     /// What is it drawn from?
@@ -102,7 +118,7 @@ pub enum Part {
 }
 
 /// Every figure, in the order in which a reader meets them.
-pub const FIGURES: [Figure; 16] = [
+pub const FIGURES: [Figure; 21] = [
     swe_by_level::FIGURE,
     melt_timing::FIGURE,
     swe_through_year::FIGURE,
@@ -114,6 +130,11 @@ pub const FIGURES: [Figure; 16] = [
     low_snow_odds::FIGURE,
     variance_by_period::FIGURE,
     change_against_spread::FIGURE,
+    inflow_by_month::FIGURE,
+    storage_through_year::FIGURE,
+    refill_rule_changes::FIGURE,
+    shortage_against_spill::FIGURE,
+    seasonal_outlook::FIGURE,
     rule_panel::FIGURE,
     record_years::FIGURE,
     record_precipitation::FIGURE,

@@ -45,6 +45,15 @@ impl Shown {
         last.or(self.others.first().copied())
     }
 
+    /// The warmer level nearest to 2 degC above the reference, of which a sentence is told where one level must do; where none is warmer,
+    /// the farthest.
+    pub fn told(&self, findings: &Findings) -> Option<usize> {
+        let c = |at: usize| findings.levels_c.get(at).copied().unwrap_or_default();
+        let distance = |at: &usize| (c(*at) - c(self.reference) - 2.0).abs();
+        let warmer = self.others.iter().copied().filter(|at| *at > self.reference);
+        warmer.min_by(|a, b| distance(a).total_cmp(&distance(b))).or_else(|| self.farthest())
+    }
+
     /// ` Of 9 levels, the reference, +1 °C, +3 °C, +4 °C and +6 °C are shown.`; nothing where all are.
     pub fn in_words(&self, findings: &Findings, units: UnitSystem) -> String {
         if self.others.len() + 1 == self.levels {

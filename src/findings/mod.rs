@@ -94,8 +94,8 @@ pub use normal::{
 };
 pub use offset::Offset;
 pub use operations::{
-    ChangedLevel, ChangedMeasure, Operations, OperationsQuestions, Outlook, OutlookLevel, RuleChange,
-    YearClasses, YearClassesLevel,
+    ChangedLevel, ChangedMeasure, Operations, OperationsQuestions, Outlook, OutlookLevel, PoolShown,
+    RuleChange, YearClasses, YearClassesLevel,
 };
 pub use parameter_spread::{LevelBySet, MeasureBySet, Mover, OverSets, ParameterSpread, SetRuns, Weighed};
 pub use partition::{AVERAGED_YEARS, HoldsMost, Partition, PartitionedPeriod};

@@ -36,10 +36,27 @@ pub struct OperationsQuestions<'a> {
     pub inflow_is_observed: bool,
     /// Volumes of the first window at which one class of years ends and the next begins, ascending, hm3.
     pub year_class_limits_hm3: &'a [f64],
+    /// What inflow is called: what was not observed is not called so.
+    pub word: &'a str,
     /// The name of the reservoir, if there is one.
     pub reservoir: Option<&'a str>,
+    /// What it can hold, and may.
+    pub pool: Option<&'a PoolShown>,
     /// The headline's name, and its single years, `[level][realization][year]`.
     pub headline: (&'a Measure, ArrayView3<'a, f64>),
+}
+
+/// What a reservoir can hold, and how much of that it may.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct PoolShown {
+    /// The most that it holds, hm3.
+    pub capacity_hm3: f64,
+    /// What lies below its outlets, hm3.
+    pub dead_hm3: f64,
+    /// The flood-space rule: what storage is not to exceed on each day of a water year of 365 days, from its first, hm3; empty where
+    /// no space is kept.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub not_above_hm3: Vec<f64>,
 }
 
 /// What becomes of the water.
@@ -47,9 +64,14 @@ pub struct OperationsQuestions<'a> {
 pub struct Operations {
     /// Whether inflow was observed; where not, it is called water input, routed.
     pub inflow_is_observed: bool,
+    /// What it is called.
+    pub word: String,
     /// The name of the reservoir.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub reservoir: Option<String>,
+    /// What it can hold, and may.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub pool: Option<PoolShown>,
     /// Of every year's inflow, the first window's volume first.
     pub inflow: Vec<MeasureFindings>,
     /// Of every year's storage.
@@ -111,7 +133,9 @@ impl Operations {
         let volumes = window.map(|at| operated.years.index_axis(Axis(1), at));
         Self {
             inflow_is_observed: questions.inflow_is_observed,
+            word: questions.word.to_owned(),
             reservoir: questions.reservoir.map(str::to_owned),
+            pool: questions.pool.cloned(),
             storage,
             performance: (0..operated.over_years.len()).into_par_iter().map(whole).collect(),
             rule_changes: rule_changes::rule_changes(operated, levels, &resamples),

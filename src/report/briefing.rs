@@ -8,6 +8,7 @@ mod generator_sheet;
 mod levels;
 mod normal;
 mod observed;
+mod operations;
 mod parameters;
 mod parts;
 mod perennial;
@@ -106,7 +107,7 @@ fn groups(
     answer: &Answer,
     (figures, of_sites): (&Figures<'_>, &[(String, Svg)]),
     (cautions, terms): (&[String], &[(&'static str, String)]),
-) -> [Group; 6] {
+) -> [Group; 7] {
     [
         Group::new(
             "The snow",
@@ -139,6 +140,7 @@ fn groups(
                 part("percent-of-median", "Percent of median", normal::section(study)),
             ],
         ),
+        operations::group(study, figures),
         Group::new(
             "The model and its fit",
             [

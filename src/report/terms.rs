@@ -4,7 +4,7 @@ use super::reader::Reader;
 use crate::season::{BARE_MM, LEAST_PEAK_MM, RAIN_ON_SNOW_MM};
 
 /// Terms and their meanings, in a reader's units.
-pub(super) fn terms(reader: Reader) -> [(&'static str, String); 40] {
+pub(super) fn terms(reader: Reader) -> [(&'static str, String); 48] {
     let water_equivalent = format!("depth of water if the snow were melted, {}", reader.units.depth().word);
     let warming_level = format!(
         "degrees added to the record's temperatures, whose own climate is {}; all levels are compared with the reference",
@@ -25,7 +25,7 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 40] {
          and snowy ground",
         reader.limit(RAIN_ON_SNOW_MM)
     );
-    let terms: [(&'static str, &str); 40] = [
+    let terms: [(&'static str, &str); 48] = [
         ("Snow water equivalent (SWE)", &water_equivalent),
         ("Water year", "starts on the stated day and is named for the calendar year in which it ends"),
         ("Warming level", &warming_level),
@@ -142,6 +142,27 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 40] {
             "Day by which the stated volume has come",
             "first day of the water year by which so much has come since its first; not reached in a year that brings less",
         ),
+        (
+            "Water input, routed",
+            "water input over the basin, the share of it that runs off, and later by what stores hold back; called inflow only where \
+             inflow was observed",
+        ),
+        (
+            "Reliability",
+            "by time: share of days on which demand is met in full; by volume: share of what is demanded that is supplied",
+        ),
+        ("Resilience", "share of days of shortage that a day without shortage follows"),
+        (
+            "Vulnerability",
+            "mean over shortages, each an unbroken run of days, of the largest share of a day's demand that is missing",
+        ),
+        (
+            "Flood-space rule, encroachment",
+            "storage that is not to be exceeded on a day, so that floods find room; storage above it",
+        ),
+        ("Carry-over", "storage left as the water year ends, for the next"),
+        ("Spill", "water that the reservoir cannot hold and that passes beside its outlets"),
+        ("Shortage", "demand that is not met, since water lies too low or the outlets pass no more"),
         ("Net melt done before a day", "net melt of the days before it over the year's"),
         ("SWE area", &area),
         ("Survey-date SWE over the peak", &over_peak),

@@ -159,8 +159,15 @@ impl Study<'_> {
         let by_year = self.by_year(&seasons.basin, &bands);
         let findings = answer(&runs, &questions, &Silent).unwrap();
         let rule_panel = super::rules::panel(&findings, -50.0, true);
+        let operated = super::operated::Operated {
+            levels_c: self.levels_c,
+            reference: self.reference,
+            realizations: count,
+            ..super::operated::PLAIN
+        };
         let findings = Findings {
             years: 30,
+            operations: Some(operated.operations()),
             record: Some(record),
             generator,
             surface: Some(surface),

@@ -8,6 +8,7 @@ mod how_sure;
 mod parameters;
 mod place;
 mod record_odds;
+mod reservoir;
 mod slopes;
 mod tipping;
 mod verdict;
@@ -51,6 +52,9 @@ pub struct Answer {
     pub elevations: Vec<String>,
     /// What it means for the volume of the melt season.
     pub volumes: Option<String>,
+    /// What it means for a reservoir.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub reservoir: Vec<String>,
     /// How much more precipitation would make up for it.
     pub break_even: Vec<String>,
     /// What one degree and one percent of precipitation do.
@@ -112,6 +116,7 @@ pub fn answer_in_words(findings: &Findings, warming: &Warming, reader: Reader) -
         elevation: place::elevation(findings, reader),
         elevations,
         volumes: volumes::volumes(findings, reader),
+        reservoir: reservoir::reservoir(findings, cause, reader),
         break_even: break_even::break_even(findings, headline, on_top, reader),
         slopes: slopes::slopes(findings, reader),
         cases: slopes::cases(findings, reader),
@@ -151,6 +156,7 @@ fn at_a_glance(
         ("How sure is it?", answer.how_sure.clone()),
         ("Does it hang on the parameters?", answer.parameters.iter().skip(1).take(2).cloned().collect()),
         ("How much water is that?", answer.volumes.iter().cloned().collect()),
+        ("What does it mean for the reservoir?", answer.reservoir.clone()),
         (
             "What would make up for it?",
             at.and_then(|at| break_even::at(findings, headline, at, on_top, reader))

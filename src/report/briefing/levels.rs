@@ -3,8 +3,10 @@
 use super::super::numbers::{DASH, counted, fixed, precision, signed};
 use super::super::reader::Reader;
 use super::super::study::Study;
-use crate::findings::{DriestAndWettest, Findings, LevelFindings, MeasureFindings, OverRealizations};
-use crate::season::Outcome;
+use crate::findings::{
+    Distribution, DriestAndWettest, Findings, LevelFindings, MeasureFindings, OverRealizations,
+};
+use crate::season::{Kind, Outcome};
 use maud::{Markup, html};
 
 /// `reference`, `+1 °C`, ...: the columns of a table by level.
@@ -86,16 +88,7 @@ fn over_realizations(reader: Reader, over: OverRealizations) -> Markup {
 
 fn cell(reader: Reader, measure: &MeasureFindings, at: &LevelFindings) -> Markup {
     let kind = measure.measure.kind;
-    let undefined = [
-        (at.periods.none, Outcome::None),
-        (at.periods.not_gone, Outcome::NotGone),
-        (at.periods.not_reached, Outcome::NotReached),
-    ];
-    let undefined: Vec<String> = undefined
-        .into_iter()
-        .filter(|(count, _)| *count > 0)
-        .map(|(count, outcome)| format!("{count} {}", reader.outcome(outcome, kind)))
-        .collect();
+    let undefined = undefined(reader, kind, &at.periods);
     html! {
         (reader.outcome(at.periods.q50, kind))
         @if let Some(shift) = at.shift {
@@ -105,6 +98,16 @@ fn cell(reader: Reader, measure: &MeasureFindings, at: &LevelFindings) -> Markup
             @if let Some(percent) = at.percent_change { (signed(percent, 0)) " %, " }
             @match at.signal_to_spread { Some(ratio) => { (fixed(ratio.value, 2)) " ×" } None => { (DASH) } }
         }
-        @if !undefined.is_empty() { br; (undefined.join(", ")) }
+        @if !undefined.is_empty() { br; (undefined) }
     }
+}
+
+/// `12 none, 3 not reached`: realizations without a number; nothing where there is none.
+pub(super) fn undefined(reader: Reader, kind: Kind, of: &Distribution) -> String {
+    let counts =
+        [(of.none, Outcome::None), (of.not_gone, Outcome::NotGone), (of.not_reached, Outcome::NotReached)];
+    let said = counts.into_iter().filter(|(count, _)| *count > 0);
+    said.map(|(count, outcome)| format!("{count} {}", reader.outcome(outcome, kind)))
+        .collect::<Vec<_>>()
+        .join(", ")
 }

@@ -3,7 +3,7 @@
 use maud::{Markup, html};
 
 /// What was used, and who published it.
-const SOURCES: [(&str, &str); 24] = [
+const SOURCES: [(&str, &str); 31] = [
     ("Degree-days of a day's sine between minimum and maximum", "Baskerville & Emin 1969"),
     ("Rain and snow by a smooth curve, where chosen", "Dai 2008, Geophysical Research Letters 35 L12802"),
     ("Years resampled in runs (stationary bootstrap)", "Politis & Romano 1994"),
@@ -28,6 +28,19 @@ const SOURCES: [(&str, &str); 24] = [
     ("Outflow centroid", "Stewart, Cayan & Dettinger 2005"),
     ("SWE area, the storage-time integral", "Aragon & Hill 2024, Hydrology and Earth System Sciences 28:781"),
     ("Seasonal snow cover of 60 days", "Hatchett 2021, Hydrology 8:32"),
+    ("Recession of a linear store", "Maillet 1905"),
+    ("Linear stores in the routing of water", "Nash 1957"),
+    (
+        "Reliability, resilience, vulnerability",
+        "Hashimoto, Stedinger & Loucks 1982, Water Resources Research 18:14",
+    ),
+    (
+        "Water that runs off, as a share, falls with warming",
+        "McCabe, Wolock, Pederson, Woodhouse & McAfee 2017, Earth Interactions 21:10",
+    ),
+    ("Classes of years with limits that stay or move", "Null & Viers 2013"),
+    ("Correlation, of values", "Pearson 1895"),
+    ("Correlation, of ranks", "Spearman 1904"),
     ("Mann-Kendall test with lag-1 correction", "Hamed & Rao 1998"),
     ("Slope of a trend", "Theil 1950; Sen 1968"),
     ("Step in a series", "Pettitt 1979"),

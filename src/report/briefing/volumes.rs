@@ -32,7 +32,7 @@ pub(super) fn section(study: &Study<'_>, figures: &Figures<'_>) -> Markup {
 }
 
 /// A row a chance, a column a level: volume ± Monte Carlo error, the range over resampled records, the change.
-fn by_chance(findings: &Findings, measure: &MeasureFindings, reader: Reader) -> Markup {
+pub(super) fn by_chance(findings: &Findings, measure: &MeasureFindings, reader: Reader) -> Markup {
     let record = measure.record_range.as_ref().filter(|record| record.is_telling());
     let range = |level: usize, at: usize| {
         let range = record?.levels.get(level)?.exceeded_hm3.get(at)?;

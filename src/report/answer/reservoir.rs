@@ -1,0 +1,51 @@
+//! What warming means for a reservoir under its stated rules.
+
+use super::super::numbers::fixed;
+use super::super::reader::Reader;
+use super::telling_level;
+use crate::figures::{LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words};
+use crate::findings::{Findings, Judged, judged};
+use crate::season::Outcome;
+
+/// How reliability by volume changes, whether that outweighs precipitation, and what a change of the rules would bring back; nothing
+/// without a reservoir, or where nothing is demanded of it.
+pub(super) fn reservoir(findings: &Findings, cause: &str, reader: Reader) -> Vec<String> {
+    let at = telling_level(findings);
+    let sentences = at.and_then(|at| {
+        let operations = findings.operations.as_ref()?;
+        let measure = operations.measure(RELIABILITY)?;
+        let [reference, warmed] = [findings.reference, at].map(|at| measure.levels[at].periods.q50);
+        let (Outcome::Value(before), Outcome::Value(after)) = (reference, warmed) else { return None };
+        let place = reader.level(findings.levels_c[at]);
+        let tenths = |share: f64| fixed(100.0 * share, 1);
+        let [said_before, said_after] = [before, after].map(tenths);
+        let how = if said_before == said_after {
+            format!("stays {said_before} % at {place}")
+        } else {
+            let direction = if after < before { "falls" } else { "rises" };
+            format!("{direction} from {said_before} to {said_after} % at {place}")
+        };
+        let against = match judged(measure.outweighs, measure.outweighs_range) {
+            Judged::Outweighs { level_c, .. } => {
+                format!("the {cause} outweighs precipitation in that from about {} on", reader.between_levels(level_c))
+            }
+            Judged::DoesNot { up_to_c } => {
+                format!("up to {}, precipitation outweighs the {cause} in that", reader.level(up_to_c))
+            }
+            Judged::CannotTell { .. } => {
+                format!("whether the {cause} outweighs precipitation in that these realizations cannot tell")
+            }
+            Judged::Unknown => "it does not spread".to_owned(),
+        };
+        let supplied = format!(
+            "Under the stated rules the reservoir's reliability by volume, the share of demand that is supplied, {how}; {against}."
+        );
+        let back = brought_back(operations, at).filter(|(_, back)| back.value >= LEAST_BROUGHT_BACK).map(|(change, back)| {
+            let rule = change_in_words(change);
+            format!("{} would bring back {} % of that.", crate::figures::sentence(&rule), fixed(100.0 * back.value, 0))
+        });
+        let back = back.filter(|_| said_before != said_after);
+        Some([Some(supplied), back].into_iter().flatten().collect())
+    });
+    sentences.unwrap_or_default()
+}
