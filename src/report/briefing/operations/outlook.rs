@@ -33,7 +33,7 @@ fn told(outlook: &Outlook, reference: usize, at: usize, reader: Reader) -> Optio
     let (reference, warmed) = (outlook.levels.get(reference)?, outlook.levels.get(at)?);
     let (before, after) = (reference.correlation?.value, warmed.correlation?.value);
     let place = reader.level(warmed.level_c);
-    let old = warmed.old_line_error_pct.map_or(String::new(), |error| {
+    let old = warmed.old_line_off_pct.map_or(String::new(), |error| {
         let much = if error.value < 0.0 { "too little" } else { "too much" };
         format!(
             "; the reference's line foretells {} % of the mean volume {much} at {place}",
@@ -62,7 +62,7 @@ fn table(study: &Study<'_>, outlook: &Outlook, reader: Reader) -> Markup {
         ),
         (
             "Old line too high, % of the mean volume".to_owned(),
-            Box::new(|at| ranged(at.old_line_error_pct, |pct| signed(pct, 1))),
+            Box::new(|at| ranged(at.old_line_off_pct, |pct| signed(pct, 1))),
         ),
     ];
     html! {
