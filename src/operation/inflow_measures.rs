@@ -10,7 +10,7 @@ const LARGEST_OF_DAYS: [usize; 3] = [1, 3, 7];
 
 /// The measures, in the order in which [`take`] gives them.
 pub(super) fn list(settings: &OperationSettings) -> Vec<Measure> {
-    let word = settings.word();
+    let (word, within) = (settings.word(), settings.word_within());
     let mut list = Vec::new();
     for [from, to] in &settings.volume_windows {
         let name = format!("inflow_{}_to_{}_hm3", name_of(*from), name_of(*to));
@@ -18,7 +18,7 @@ pub(super) fn list(settings: &OperationSettings) -> Vec<Measure> {
         list.push(Measure::new(Kind::VolumeHm3, name, title).told_as_volume());
     }
     list.push(
-        Measure::new(Kind::VolumeHm3, "inflow_year_hm3", format!("{word} of the water year"))
+        Measure::new(Kind::VolumeHm3, "inflow_year_hm3", format!("{within} of the water year"))
             .told_as_volume(),
     );
     for day in &settings.shares_before {
@@ -26,7 +26,7 @@ pub(super) fn list(settings: &OperationSettings) -> Vec<Measure> {
         list.push(Measure::new(
             Kind::Share,
             name,
-            format!("share of the year's {word} before {}", day.words()),
+            format!("share of the year's {within} before {}", day.words()),
         ));
     }
     for month in settings.months() {
@@ -34,14 +34,14 @@ pub(super) fn list(settings: &OperationSettings) -> Vec<Measure> {
         list.push(Measure::new(
             Kind::Share,
             name,
-            format!("share of the year's {word} in {}", MONTHS[month]),
+            format!("share of the year's {within} in {}", MONTHS[month]),
         ));
     }
     list.push(Measure::new(Kind::DayOfWaterYear, "inflow_centroid_day", format!("centroid of {word}")));
     for days in LARGEST_OF_DAYS {
         let of = if days == 1 { "a day".to_owned() } else { format!("{days} days in succession") };
         let name = format!("inflow_largest_{days}_day{}_hm3", if days == 1 { "" } else { "s" });
-        list.push(Measure::new(Kind::VolumeHm3, name, format!("largest {word} of {of}")));
+        list.push(Measure::new(Kind::VolumeHm3, name, format!("largest {within} of {of}")));
     }
     list
 }

@@ -30,6 +30,11 @@ impl OperationSettings {
         if self.is_observed { "inflow" } else { "water input, routed" }
     }
 
+    /// The same where the sentence goes on.
+    pub fn word_within(&self) -> &'static str {
+        if self.is_observed { "inflow" } else { "water input, routed," }
+    }
+
     /// The months, 0 for January, from the water year's first day on.
     pub(super) fn months(&self) -> impl Iterator<Item = usize> + Clone {
         let first = self.water_year_starts.0.month() as usize - 1;
