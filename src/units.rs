@@ -194,7 +194,8 @@ impl FlowUnit {
         ("acre-feet/day", Self::AcreFootPerDay),
     ];
 
-    /// A flow in this unit, in hm3 a day.
+    /// A flow in this unit, in hm3 a day. A year's volume is the sum over its days, 365 or 366 of them: no length of a year is assumed
+    /// anywhere.
     ///
     /// ```
     /// use thawline::units::{FlowUnit, acre_feet};

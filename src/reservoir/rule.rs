@@ -41,8 +41,9 @@ impl FloodRule {
         Self { not_above_hm3: (0..COMMON_DATES).map(of_day).collect() }
     }
 
-    /// The same with its refill moved by so many days, earlier where negative: where the rule rises, it rises so much sooner or
-    /// later; where it falls or stays, nothing changes.
+    /// The same with its refill moved by so many days, earlier where negative: earlier, each date may hold what it or the date so
+    /// many days later may hold, the larger; later, what it or the date so many days before may hold, the smaller. So the rule rises so much
+    /// sooner or later, and falls as before, unless it is low, or high, for fewer days than that.
     pub fn with_refill_moved(&self, days: i32) -> Self {
         let moved = |day: usize| {
             let there = (day as i32 - days).rem_euclid(COMMON_DATES as i32) as usize;
