@@ -34,6 +34,7 @@ mod packages;
 mod parameter_sets;
 mod pictures;
 mod places;
+mod reservoir_page;
 mod results;
 mod rule_panel;
 mod scenario_faults;
