@@ -38,7 +38,7 @@ pub(super) fn section(study: &Study<'_>, found: &Operations, figures: &Figures<'
             } }
             (figures.of(Part::Reservoir))
             (super::table(study, "Performance over a whole realization (Hashimoto, Stedinger & Loucks 1982)", &performance))
-    (super::table(study, "Lowest storage, releases, shortage and spill of a year", &others))
+            (super::table(study, "Lowest storage, releases, shortage and spill of a year", &others))
             details { summary { "Storage, date by date" } (super::table(study, "Storage as the day begins", &on_dates)) }
         } }
 }
