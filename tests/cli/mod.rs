@@ -35,6 +35,7 @@ mod packages;
 mod parameter_sets;
 mod pictures;
 mod places;
+mod reservoir_page;
 mod results;
 mod rule_panel;
 mod scenario_faults;

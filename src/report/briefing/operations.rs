@@ -76,7 +76,7 @@ fn cell(reader: Reader, kind: Kind, at: &LevelFindings) -> Markup {
         @if let Some(shift) = at.shift {
             br;
             (reader.change_of(kind, shift.median.value, None))
-            @if shift.has_range() { " (" (bare(shift.q05)) " to " (bare(shift.q95)) ")" }
+            @if shift.has_range() { br; (bare(shift.q05)) " to " (bare(shift.q95)) }
             br;
             @match at.signal_to_spread { Some(ratio) => { (fixed(ratio.value, 2)) " ×" } None => { (DASH) } }
         }
@@ -99,12 +99,15 @@ fn outweighs(of: &MeasureFindings, reader: Reader) -> String {
     }
 }
 
-/// `Reliability by volume is 98 % at +2 °C, 99 % at the reference (change −0.6 points); that does not outweigh precipitation up to +4 °C.`
+/// `Reliability by volume: 98.6 % at the reference, 98.0 % at +2 °C (median change −0.6 points); up to +4 °C, precipitation outweighs
+/// warming in it.`
 fn sentence(findings: &Findings, of: &MeasureFindings, at: usize, reader: Reader) -> Option<String> {
     let [reference, warmed] = [findings.reference, at].map(|at| of.levels.get(at));
     let (reference, warmed) = (reference?, warmed?);
     let kind = of.measure.kind;
     let shift = warmed.shift?.median.value;
+    let unit =
+        if kind == Kind::VolumeHm3 { format!(" {}", reader.units.volume().word) } else { String::new() };
     let against = match judged(of.outweighs, of.outweighs_range) {
         Judged::Outweighs { level_c, .. } => {
             format!("warming outweighs precipitation in it from about {} on", reader.between_levels(level_c))
@@ -118,7 +121,7 @@ fn sentence(findings: &Findings, of: &MeasureFindings, at: usize, reader: Reader
         Judged::Unknown => "it does not spread, so that nothing is to be outweighed".to_owned(),
     };
     Some(format!(
-        "{}: {} at the reference, {} at {} (median change {}); {against}.",
+        "{}: {} at the reference, {} at {} (median change {}{unit}); {against}.",
         crate::figures::sentence(&of.measure.title),
         value(reader, kind, reference.periods.q50),
         value(reader, kind, warmed.periods.q50),

@@ -13,7 +13,6 @@ pub(super) fn section(study: &Study<'_>, found: &Operations, figures: &Figures<'
     let window = found.inflow.iter().find(|of| of.measure.is_volume);
     let told: Vec<&MeasureFindings> =
         window.into_iter().chain(super::named(found, &["inflow_centroid_day", "inflow_year_hm3"])).collect();
-    let all: Vec<&MeasureFindings> = found.inflow.iter().collect();
     let word = crate::figures::sentence(&found.word);
     html! {
         (super::caution())
@@ -39,7 +38,10 @@ pub(super) fn section(study: &Study<'_>, found: &Operations, figures: &Figures<'
             }
             (by_chance(findings, window, reader))
         }
-        (super::table(study, &format!("{word}, in periods of years"), &all))
+        @let (by_month, others): (Vec<&MeasureFindings>, Vec<&MeasureFindings>) =
+            found.inflow.iter().partition(|of| of.measure.name.starts_with("inflow_in_"));
+        (super::table(study, &word, &others))
+        details { summary { "Month by month" } (super::table(study, &word, &by_month)) }
         p {
             "The largest of a day, and of days in succession, are of this routing alone, and no flood peaks."
         }
