@@ -174,7 +174,8 @@ fn operations(ready: &Ready, study: &Seasons, held: &Seasons) -> Option<Operatio
         reservoir: operation.reservoir.as_ref().map(|reservoir| reservoir.name.as_str()),
         headline: (&study.basin.measures[0], study.basin.years.index_axis(Axis(1), 0)),
     };
-    Some(Operations::of(study.operated.as_ref()?, held.operated.as_ref(), &questions))
+    let found = Operations::of(study.operated.as_ref()?, held.operated.as_ref(), &questions);
+    Some(Operations { inflow_skill: ready.inflow_skill.clone(), ..found })
 }
 
 /// Watches for the wish to stop alone: runs that are too many and too short to count on a bar.

@@ -64,6 +64,10 @@ const ABOUT: &[(&str, &str)] = &[
         "What one degree and one percent of precipitation do, by level, in the basin and every band.",
     ),
     ("generator-sheet", "Statistics of the record beside those of realizations as long as it."),
+    (
+        "inflow-skill",
+        "Modelled against observed inflow by routing and years: scores, and the routing's parameters.",
+    ),
     ("low-runs", "Chance that a realization holds low years in a row, by length and level."),
     ("low-snow-in-the-record", "Low-snow years among the record's own, run at every level."),
     ("low-snow-odds", "Chance of a low-snow year by level, and its ratio to the reference's."),
