@@ -1,21 +1,30 @@
 //! What an invented river is made of: plain numbers, and the water that would have come down it.
 
+use super::errors::{Errors, Factors};
 use super::layout::Layout;
-use super::place::Place;
-use super::snow_site::{Errors, lasting_days};
-use super::weather::Day;
+use super::place::{Hole, Place};
+use super::snow_site::whole_years;
+use super::weather::{Day, draw};
 use crate::basin::{Band, Basin, GradientForm, Ground, PrecipitationGradient, TemperatureGradient};
 use crate::inflow::{Router, Routing, WaterYear};
 use crate::perturb::MonthlyChange;
 use crate::snow::{
     DegreeRule, Engine, GaugeMultiplier, LaneSpec, Lanes, OpenLedger, SnowParams, StationPhase, correct_catch,
 };
+use crate::units::FlowUnit;
+use std::fmt::Write;
 
 /// A river whose flow into a lake is measured by day. Its basin differs from the scenario's model, as real ones do.
 #[derive(Debug)]
 pub struct River {
     /// What is measured.
     pub name: &'static str,
+    /// What the columns of its file hold, in a remark.
+    pub remark: &'static str,
+    /// Names of the columns.
+    pub header: &'static str,
+    /// Unit of the flows.
+    pub unit: FlowUnit,
     /// Change of temperature with elevation, degC per km.
     pub temperature_gradient_c_per_km: f64,
     /// Change of precipitation with elevation, percent of the station's per 100 m.
@@ -32,6 +41,35 @@ pub struct River {
     pub routing: Routing,
     /// How far what is read lies from what flowed.
     pub errors: Errors,
+}
+
+/// The flows of a place's river as a text table, a line a day.
+///
+/// # Errors
+/// A ledger that does not close in the run that the flows are made of.
+pub fn table(place: &Place, river: &River) -> Result<String, OpenLedger> {
+    let layout = &place.layout;
+    let mut text = format!(
+        "{remark} {river}, in the basin of {basin}: INVENTED for a demo; no such river exists\n\
+         {remark} a snow model's run on invented weather, routed, with random errors put on; do not use these numbers for \
+         anything real\n\
+         {remark} {columns}\n\
+         {header}\n",
+        remark = layout.remark,
+        river = river.name,
+        basin = place.basin,
+        columns = river.remark,
+        header = river.header,
+    );
+    let days = draw(place);
+    let mut factors = Factors::new(place, &river.errors);
+    for (day, flow_hm3) in days.iter().zip(river.flow_hm3(place, &days)?) {
+        let read_hm3 = (flow_hm3 * factors.next(day.date)).max(0.0);
+        let is_lost = place.is_lost(day.date, &[Hole::Flow]);
+        let cell = layout.cell(read_hm3 / river.unit.to_hm3_a_day(1.0), 0, is_lost);
+        let _ = writeln!(text, "{},{cell}", layout.date(day.date));
+    }
+    Ok(text)
 }
 
 impl River {
@@ -55,7 +93,7 @@ impl River {
             degree_day_factor_highest: self.degree_day_factor_highest,
             ..SnowParams::defaults(DegreeRule::Diurnal, basin.is_southern())
         };
-        let mut weather = lasting_days(place, days);
+        let mut weather = whole_years(place, days);
         let multiplier = GaugeMultiplier { rain: 1.0, snow: self.snow_catch };
         correct_catch(&mut weather, multiplier, StationPhase::of(&snow, place.station_m));
         let of_bands = basin.bands.iter().zip(basin.shares()).map(|(band, share)| LaneSpec {
