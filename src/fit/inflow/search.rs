@@ -18,7 +18,7 @@ const LEAST_APART_DAYS: f64 = 0.5;
 /// none, as where it never changes.
 ///
 /// The search begins at the stated routing. What is maximized is `-(1 - efficiency)^2`, which has its top at the same place, and a
-/// round one: the efficiency itself comes to a point at 1, which no parabola fits.
+/// round one: the efficiency itself has a crease where mean and spread are right, along which no parabola finds its way.
 pub(super) fn fitted(
     record: &InflowRecord,
     stated: &Routing,

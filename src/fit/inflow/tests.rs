@@ -152,28 +152,47 @@ fn a_routing_agrees_with_itself() {
     assert_eq!((window.years, window.bias_pct, window.mean_absolute_error_pct), (8, Some(0.0), Some(0.0)));
 }
 
-/// The fit finds the routing that has made the inflow, from another one, on all years and on each half, which then does as well on
-/// the other half. The climb ends within 0.001 of each range: of a share 0.001, of days 0.5 % (0.001 * ln 101) and 0.8 %; parameters
-/// that make up for each other a little take that further, to a few times as much. The same bytes on one thread and on three.
+/// The fit finds the routing that has made the inflow, from another one, on all years and on each half. Readings are off by up to a
+/// fifth, so that all of KGE hangs on the parameters by squares: 2920 days then tell the volume to 2 %, the stores to 10 %, of a half to
+/// 15 %; what was stated is off by 25, 150, 71 and 122 %. The same bytes on one thread and on three.
 #[test]
 fn a_fit_finds_the_routing_that_made_the_inflow() {
-    let record = observed(8, &TRUTH);
+    let mut record = observed(8, &TRUTH);
+    for (at, year) in record.years.iter_mut().enumerate() {
+        for (day, hm3) in year.observed_hm3.iter_mut().enumerate() {
+            *hm3 = hm3.map(|hm3| hm3 * (0.8 + 0.4 * scattered(700_001 + at * 365 + day)));
+        }
+    }
     let skill = inflow_skill(&record, &STATED, true, 7).expect("a skill");
     let fit = skill.fit.as_ref().expect("a fit");
-    let found = fit.halves.iter().map(|half| &half.routing).chain([&skill.routing]);
-    for routing in found {
+    let found = fit.halves.iter().map(|half| (&half.routing, 0.15)).chain([(&skill.routing, 0.1)]);
+    for (routing, relative) in found {
         let slow = routing.slow.expect("a slow store");
         let all = [
-            (routing.runoff_fraction[0], 0.4, 0.01),
-            (routing.runoff_fraction[4], 0.56, 0.01),
-            (routing.recession_days, 6.0, 0.02),
-            (slow.share, 0.35, 0.02),
-            (slow.recession_days, 90.0, 0.03),
+            (routing.runoff_fraction[0], 0.4, 0.02),
+            (routing.runoff_fraction[4], 0.56, 0.02),
+            (routing.recession_days, 6.0, relative),
+            (slow.share, 0.35, relative),
+            (slow.recession_days, 90.0, relative),
         ];
         for (found, truth, relative) in all {
             assert!((found / truth - 1.0).abs() < relative, "{found} for {truth} in {routing:?}");
         }
     }
+    for threads in [1, 3] {
+        let pool = rayon::ThreadPoolBuilder::new().num_threads(threads).build().unwrap();
+        assert_eq!(pool.install(|| inflow_skill(&record, &STATED, true, 7)).as_ref(), Some(&skill));
+    }
+}
+
+/// Of inflow without any error a fit leaves hardly any: a skill of 1 to 0.001, in years that it had not seen, too, and the volume to
+/// 1 %. Its stores are told less well than of readings with errors: correlation comes to 1 by the square of what they are off, and what
+/// is climbed by its square.
+#[test]
+fn a_fit_to_inflow_without_errors_has_a_skill_of_1() {
+    let skill = inflow_skill(&observed(8, &TRUTH), &STATED, true, 7).expect("a skill");
+    let fit = skill.fit.as_ref().expect("a fit");
+    assert!((skill.routing.runoff_fraction[4] / 0.56 - 1.0).abs() < 0.01, "{:?}", skill.routing);
     assert_eq!(fit.stated, STATED);
     let above = |scores: &InflowScores| scores.skill_above_day_of_year_mean.expect("a skill");
     assert!(above(&skill.scores) > 0.999 && above(&fit.of_stated) < 0.9, "{skill:?}");
@@ -183,15 +202,10 @@ fn a_fit_finds_the_routing_that_made_the_inflow() {
         assert_eq!((half.seen.years, half.not_seen.years), (4, 4));
     }
     assert!(skill.lowest_above_mean().is_some_and(|above| above > 0.999));
-    for threads in [1, 3] {
-        let pool = rayon::ThreadPoolBuilder::new().num_threads(threads).build().unwrap();
-        assert_eq!(pool.install(|| inflow_skill(&record, &STATED, true, 7)).as_ref(), Some(&skill));
-    }
 }
 
-/// Observed inflow that has nothing to do with the water: no skill on years not seen. The mean of seven other years misses noise
-/// of variance v by (1 + 1/7) v, so that a constant comes to 1/8; what a fit for KGE makes varies as the noise does and misses it by
-/// about 2 v, which is -0.75.
+/// Observed inflow that has nothing to do with the water: no skill on years not seen. The mean of 15 other years misses noise of
+/// variance v by (1 + 1/15) v, and what varies without it by more than that as soon as it varies by v/15.
 #[test]
 fn noise_has_no_skill() {
     let mut record = rivers(16);
@@ -201,7 +215,7 @@ fn noise_has_no_skill() {
     }
     let skill = inflow_skill(&record, &STATED, true, 7).expect("a skill");
     let lowest = skill.lowest_above_mean().expect("a skill");
-    assert!((-2.0..0.0).contains(&lowest), "{lowest}");
+    assert!(lowest < 0.0, "{lowest}");
 }
 
 /// Nothing is fitted to inflow that never changes, and nothing is said where none was observed on any day; of three years no half is
