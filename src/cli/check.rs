@@ -12,8 +12,8 @@ use super::runs::halted;
 use crate::baseline::Seasons;
 use crate::ensemble::Watch;
 use crate::findings::GeneratorSheet;
-use crate::report::{Checked, InflowFile};
 use crate::report::numbers::counted;
+use crate::report::{Checked, InflowFile};
 use std::path::Path;
 
 /// Runs the command; with the generator sheet, if it is asked for.

@@ -130,7 +130,8 @@ impl River {
 /// The bands of a place, as its table has them.
 fn bands(place: &Place) -> Vec<Band> {
     let Layout { elevation_unit, area_unit, .. } = &place.layout;
-    let edge = |band: usize| elevation_unit.to_metres(f64::from(place.lowest + band as u32 * place.band_height));
+    let edge =
+        |band: usize| elevation_unit.to_metres(f64::from(place.lowest + band as u32 * place.band_height));
     let bands = place.band_areas.iter().enumerate().map(|(band, area)| {
         let (lower_m, upper_m) = (edge(band), edge(band + 1));
         Band {

@@ -65,7 +65,11 @@ impl InflowSkill {
     pub fn lowest_above_mean(&self) -> Option<f64> {
         let halves = self.fit.as_ref().map_or(&[][..], |fit| &fit.halves);
         let not_seen = halves.iter().map(|half| half.not_seen.skill_above_day_of_year_mean);
-        let all = if halves.is_empty() { vec![self.scores.skill_above_day_of_year_mean] } else { not_seen.collect() };
+        let all = if halves.is_empty() {
+            vec![self.scores.skill_above_day_of_year_mean]
+        } else {
+            not_seen.collect()
+        };
         all.into_iter().flatten().reduce(f64::min)
     }
 }

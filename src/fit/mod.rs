@@ -38,7 +38,9 @@ mod uncertainty;
 mod year;
 
 pub use comparison::{Bias, Comparison, DateError, SurveyBias};
-pub use inflow::{InflowFit, InflowHalf, InflowRecord, InflowScores, InflowSkill, InflowYear, VolumeScores, inflow_skill};
+pub use inflow::{
+    InflowFit, InflowHalf, InflowRecord, InflowScores, InflowSkill, InflowYear, VolumeScores, inflow_skill,
+};
 pub use judged::{Held, Judged};
 pub use left_out::{LeftOut, Rule, left_out, without};
 pub use not_seen::not_seen;

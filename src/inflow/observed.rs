@@ -127,7 +127,8 @@ impl ObservedInflow {
 
     /// Days with a reading in the water years in use.
     pub fn days_in(&self, weather: &Series) -> usize {
-        let of_year = |year: &YearSpan| self.hm3_a_day.range(year.first..date_of(year.first, year.days + 1)).count();
+        let of_year =
+            |year: &YearSpan| self.hm3_a_day.range(year.first..date_of(year.first, year.days + 1)).count();
         weather.years.iter().map(of_year).sum()
     }
 

@@ -35,8 +35,7 @@ pub(super) fn fitted(
         Ok::<_, Infallible>(asked.iter().map(value).collect())
     };
     let start = point_of(stated);
-    let plan =
-        Search { seed, dimensions: start.len(), starts: vec![Some(start)], evaluations: EVALUATIONS };
+    let plan = Search { seed, dimensions: start.len(), starts: vec![Some(start)], evaluations: EVALUATIONS };
     let Ok(mut found) = search(&plan, values);
     let Ok(()) = refine(&mut found, values);
     found.first().map(|best| routing_at(stated, &best.point))

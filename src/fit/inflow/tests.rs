@@ -120,7 +120,8 @@ fn scattered(seed: usize) -> f64 {
 fn rivers(years: usize) -> InflowRecord {
     let of_year = |at: usize| {
         let input = |day: usize| {
-            let storm = if scattered(at * 365 + day) > 0.8 { 20.0 * scattered(at * 365 + day + 5) } else { 0.0 };
+            let storm =
+                if scattered(at * 365 + day) > 0.8 { 20.0 * scattered(at * 365 + day + 5) } else { 0.0 };
             let melt = if (190..270).contains(&day) { 12.0 * scattered(at) } else { 0.0 };
             storm + melt
         };

@@ -120,7 +120,8 @@ fn scores(found: &InflowSkill, reader: Reader) -> Markup {
 
 fn row(name: &str, scores: &InflowScores, reader: Reader) -> Markup {
     let score = |score: Option<f64>| score.map_or(DASH.to_owned(), |score| fixed(score, 2));
-    let percent = |percent: Option<f64>| percent.map_or(DASH.to_owned(), |pct| format!("{} %", signed(pct, 0)));
+    let percent =
+        |percent: Option<f64>| percent.map_or(DASH.to_owned(), |pct| format!("{} %", signed(pct, 0)));
     html! { tr {
         th scope="row" { (name) }
         td { (fixed(scores.days as f64, 0)) br; "of " (counted(scores.years, "year")) }
@@ -150,7 +151,8 @@ fn row(name: &str, scores: &InflowScores, reader: Reader) -> Markup {
 /// What was searched for: as stated, and what was found on all years and on each half.
 fn parameters(found: &InflowSkill, fit: &InflowFit) -> Markup {
     let halves = fit.halves.iter().map(|half| (half.fitted_on.words(), &half.routing));
-    let columns = [("as stated", &fit.stated), ("all years, in use", &found.routing)].into_iter().chain(halves);
+    let columns =
+        [("as stated", &fit.stated), ("all years, in use", &found.routing)].into_iter().chain(halves);
     let columns: Vec<(&str, &Routing)> = columns.collect();
     let rows: [(&str, fn(&Routing) -> String); 4] = [
         ("share of the water that runs off", share_of_months),
@@ -179,7 +181,8 @@ fn parameters(found: &InflowSkill, fit: &InflowFit) -> Markup {
 
 /// `0.62`; of months that differ, `0.4–0.8`.
 fn share_of_months(routing: &Routing) -> String {
-    let [low, high] = [f64::min, f64::max].map(|of| routing.runoff_fraction.into_iter().reduce(of).unwrap_or_default());
+    let [low, high] =
+        [f64::min, f64::max].map(|of| routing.runoff_fraction.into_iter().reduce(of).unwrap_or_default());
     let [low, high] = [low, high].map(|share| stated((share * 100.0).round() / 100.0));
     if low == high { low } else { format!("{low}–{high}") }
 }

@@ -10,8 +10,9 @@ use csv::Writer;
 /// The routing in force, and of a fit the routing as stated and what was fitted on half of the years.
 pub(super) fn inflow_skill(skill: &InflowSkill, units: UnitSystem) -> Vec<u8> {
     let mut writer = Writer::from_writer(Vec::new());
-    let mut header =
-        ["routing", "fitted_on", "judged_on", "had_seen_these_years", "years", "days"].map(str::to_owned).to_vec();
+    let mut header = ["routing", "fitted_on", "judged_on", "had_seen_these_years", "years", "days"]
+        .map(str::to_owned)
+        .to_vec();
     header.extend(
         ["nash_sutcliffe", "kling_gupta", "correlation", "variability_ratio", "mean_ratio", "bias_pct"]
             .map(str::to_owned),
