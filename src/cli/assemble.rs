@@ -103,7 +103,8 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             unlikely
                 .extend(baseline.iter().flat_map(|baseline| baseline.unlikely(scenario.weather.detrend_to)));
             let yearly_mm = basin.precipitation_ratio(station_m) * mean_yearly_mm(&weather);
-            unlikely.extend(scenario.season.unlikely(cubic_hectometres(yearly_mm, basin.area_km2())));
+            let yearly_hm3 = cubic_hectometres(yearly_mm, basin.area_km2());
+            unlikely.extend(scenario.season.unlikely(yearly_hm3));
             let mut observations = Vec::with_capacity(observed.len());
             for (site, (observed, file)) in scenario.observed.iter().zip(observed) {
                 unlikely.extend(observed.unlikely(&site.key, site.elevation_m, &basin, station_m));
@@ -127,7 +128,11 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             named_changes.extend(projections.unwrap_or_default());
             let (observed_inflow, inflow_file) = inflow.unzip();
             files.extend(inflow_file);
-            let operation = operation_of(&scenario, basin.area_km2());
+            let unused = observed_inflow.as_ref().and_then(|observed| observed.unused(&weather));
+            let is_observed = observed_inflow.is_some() && unused.is_none();
+            unlikely.extend(observed_inflow.iter().flat_map(|observed| observed.unlikely(yearly_hm3)));
+            unlikely.extend(unused);
+            let operation = operation_of(&scenario, basin.area_km2(), is_observed);
             let mut defaults = draft.defaults;
             note_baseline_years(&baseline_years, &mut defaults);
             let mut ready = Ready {
@@ -148,6 +153,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
                 named_changes,
                 operation,
                 observed_inflow,
+                inflow_skill: None,
                 files,
                 stem,
             };
@@ -198,7 +204,7 @@ fn read_record_of(draft: &Draft, folder: &Path) -> Result<Option<(Record, InputF
 }
 
 /// What becomes of the water, where the scenario asks it.
-fn operation_of(scenario: &Scenario, area_km2: f64) -> Option<Operation> {
+fn operation_of(scenario: &Scenario, area_km2: f64, is_observed: bool) -> Option<Operation> {
     let inflow = scenario.inflow.as_ref()?;
     let reservoir = scenario.reservoir.as_ref();
     let settings = OperationSettings {
@@ -206,7 +212,7 @@ fn operation_of(scenario: &Scenario, area_km2: f64) -> Option<Operation> {
         volume_windows: scenario.season.volume_windows.clone(),
         shares_before: scenario.season.outflow_before.clone(),
         storage_dates: reservoir.map_or_else(Vec::new, |typed| typed.storage_dates.clone()),
-        is_observed: inflow.observed.is_some(),
+        is_observed,
     };
     Some(Operation {
         settings,

@@ -12,8 +12,8 @@ use super::runs::halted;
 use crate::baseline::Seasons;
 use crate::ensemble::Watch;
 use crate::findings::GeneratorSheet;
-use crate::report::Checked;
 use crate::report::numbers::counted;
+use crate::report::{Checked, InflowFile};
 use std::path::Path;
 
 /// Runs the command; with the generator sheet, if it is asked for.
@@ -70,6 +70,7 @@ fn describe<'a>(
         baseline_years: &ready.baseline_years,
         detrended: ready.detrended.as_ref(),
         sites: ready.sites(),
+        inflow: inflow_file(ready),
         fitted: ready.fitted_from(),
         parameter_sets: ready.sets_from(),
         season: &scenario.season,
@@ -81,4 +82,21 @@ fn describe<'a>(
         unlikely: &ready.unlikely,
         generator,
     }
+}
+
+/// What the file of observed inflow holds.
+fn inflow_file(ready: &Ready) -> Option<InflowFile<'_>> {
+    let (typed, observed) =
+        (ready.scenario.inflow.as_ref()?.observed.as_ref()?, ready.observed_inflow.as_ref()?);
+    let [first, last] = observed.first_and_last()?;
+    Some(InflowFile {
+        file: &typed.file,
+        unit: typed.columns.flow.unit,
+        days: observed.hm3_a_day.len(),
+        first,
+        last,
+        days_in_use: observed.days_in(&ready.weather),
+        days_below_0: observed.negative,
+        is_fitted_to: typed.fits,
+    })
 }

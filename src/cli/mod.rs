@@ -14,6 +14,7 @@ mod examples;
 mod failure;
 mod fit;
 mod generator_sheet;
+mod held_to_inflow;
 mod help;
 mod input;
 mod last_words;

@@ -9,7 +9,7 @@ use crate::defaults::DefaultInForce;
 use crate::ensemble::{BandClimate, WinterMonths, band_climates, snow_that_piles_up};
 use crate::fault::Unlikely;
 use crate::findings::NamedChange;
-use crate::fit::{Comparison, Model, Parameters, Site, compare};
+use crate::fit::{Comparison, InflowSkill, Model, Parameters, Site, compare};
 use crate::inflow::ObservedInflow;
 use crate::observed::Observations;
 use crate::operation::Operation;
@@ -52,10 +52,12 @@ pub(super) struct Ready {
     pub operation: Option<Operation>,
     /// Observed inflow.
     pub observed_inflow: Option<ObservedInflow>,
+    /// How near modelled inflow comes to it, once that has been asked.
+    pub inflow_skill: Option<InflowSkill>,
     /// Changes of climate that have a name: the scenario's cases, and its file's projections behind them.
     pub named_changes: Vec<NamedChange>,
-    /// The scenario, the bands, the weather, the sites, the files of fitted parameters, of sets of them and of projections, as
-    /// read.
+    /// The scenario, the bands, the weather, the sites, the files of fitted parameters, of sets of them, of projections and of
+    /// observed inflow, as read.
     pub files: Vec<InputFile>,
     /// The last part of the scenario's name without the ending.
     pub stem: Option<String>,

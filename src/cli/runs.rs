@@ -182,7 +182,8 @@ fn operations(ready: &Ready, study: &Seasons, held: &Seasons) -> Option<Operatio
         pool: pool.as_ref(),
         headline: (&study.basin.measures[0], study.basin.years.index_axis(Axis(1), 0)),
     };
-    Some(Operations::of(study.operated.as_ref()?, held.operated.as_ref(), &questions))
+    let found = Operations::of(study.operated.as_ref()?, held.operated.as_ref(), &questions);
+    Some(Operations { inflow_skill: ready.inflow_skill.clone(), ..found })
 }
 
 /// What figures and pages show of the reservoir itself.

@@ -6,6 +6,7 @@ use super::browser;
 use super::done::{Done, names_of};
 use super::ending::Ending;
 use super::failure::{Failure, may_be_replaced, unpublished};
+use super::held_to_inflow::held_to_inflow;
 use super::output;
 use super::own_years::own_years;
 use super::pictures::Pictures;
@@ -47,6 +48,7 @@ pub(super) fn run(path: &Path, open: bool, pictures: Pictures, shared: &Shared) 
     let progress = Progress::new(shared);
     let ready = assemble(path, shared)?;
     mind_interrupts();
+    let ready = in_pool(shared, || held_to_inflow(ready))??;
     let target = target(&ready, shared)?;
     may_be_replaced(&target, "study", shared)?;
     let scenario = &ready.scenario;
@@ -124,6 +126,7 @@ fn describe<'a>(
         snow: &scenario.snow,
         fitted: ready.fitted_from(),
         parameter_sets: ready.sets_from(),
+        routing: ready.operation.as_ref().map(|operation| operation.routing),
         warming: &scenario.warming.warming,
         mean_change_sd_pct: scenario.realizations.mean_change_sd_pct,
         generator: scenario.realizations.generator,

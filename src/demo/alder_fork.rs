@@ -1,8 +1,9 @@
 //! Alder Fork: a wet winter, a dry summer, and lower bands that lie near the snow line.
 
+use super::errors::Errors;
 use super::layout::Layout;
 use super::place::{Climate, Hole, Place, YearToYear, gap};
-use super::snow_site::{Errors, SnowSite, Visits};
+use super::snow_site::{SnowSite, Visits};
 use super::swing::{NORTHERN_MIDWINTER_DAY, Swing};
 
 /// The main demo: its lower bands lose most of their snow to a degree of warming, its upper ones almost none.

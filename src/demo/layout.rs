@@ -1,5 +1,6 @@
 //! How the invented agencies write their files: one as simply as can be, the other as files often come.
 
+use crate::units::{AreaUnit, LengthUnit};
 use chrono::NaiveDate;
 
 /// The looks of an agency's files.
@@ -31,6 +32,10 @@ pub struct Layout {
     pub bands_remark: &'static str,
     /// Names of the columns of the area-elevation table.
     pub bands_header: &'static str,
+    /// Unit of its elevations.
+    pub elevation_unit: LengthUnit,
+    /// Unit of its areas.
+    pub area_unit: AreaUnit,
 }
 
 /// Units of an agency.
@@ -68,6 +73,8 @@ impl Layout {
         swe_header: "date,swe_mm",
         bands_remark: "elevations in m, areas in km2",
         bands_header: "lower_m,upper_m,area_km2",
+        elevation_unit: LengthUnit::Metre,
+        area_unit: AreaUnit::SquareKilometre,
     };
 
     /// US units, an accumulating gauge, long names with blanks in them, American dates.
@@ -86,6 +93,8 @@ impl Layout {
         swe_header: "Day,Water in the snow (in)",
         bands_remark: "elevations in feet, areas in square miles",
         bands_header: "lower_ft,upper_ft,area_mi2",
+        elevation_unit: LengthUnit::Foot,
+        area_unit: AreaUnit::SquareMile,
     };
 
     /// A date as the agency writes it.

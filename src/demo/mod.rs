@@ -1,16 +1,19 @@
 //! The demo: three invented places with their daily weather, bands, snow and scenarios, written by the program itself.
 //!
 //! `alder_fork`, `frostbell_creek` and `tamsin_river` say what the places are like, in the plain numbers of `place`,
-//! `swing` and `snow_site`; `weather` draws forty water years of days from them, and `snow_site` runs the engine on
-//! those; `station`, `bands` and `observed` write the files a user would bring, in the looks of `layout`.
+//! `swing`, `snow_site` and `river`; `weather` draws forty water years of days from them, `snow_site` and `river` run the
+//! engine on those, and `errors` says how far readings lie from what is there; `station`, `bands`, `observed` and `river` write
+//! the files a user would bring, in the looks of `layout`.
 //! Nothing here is measured anywhere; every file says so at its head.
 
 mod alder_fork;
 mod bands;
+mod errors;
 mod frostbell_creek;
 mod layout;
 mod observed;
 mod place;
+mod river;
 mod snow_site;
 mod station;
 mod swing;
@@ -58,6 +61,10 @@ pub fn files() -> Result<Vec<(&'static str, String)>, OpenLedger> {
         (
             "demo-data/tamsin-river/lapwing-flat.csv",
             observed::table(&tamsin_river::PLACE, &tamsin_river::SNOW_SITE)?,
+        ),
+        (
+            "demo-data/tamsin-river/quillback-inflow.csv",
+            river::table(&tamsin_river::PLACE, &tamsin_river::RIVER)?,
         ),
     ])
 }

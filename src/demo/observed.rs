@@ -1,5 +1,6 @@
 //! The invented snow site's file: what people or a pillow would have read, with their errors.
 
+use super::errors::Factors;
 use super::place::{Hole, Place};
 use super::snow_site::{SnowSite, Visits};
 use super::weather::draw;
@@ -8,15 +9,10 @@ use crate::perturb::stream;
 use crate::snow::OpenLedger;
 use chrono::{Datelike, NaiveDate, TimeDelta};
 use rand::RngExt;
-use rand_distr::{Distribution, StandardNormal};
 use std::fmt::Write;
 
 /// Stream of the days on which visits are made.
 const VISITS_STREAM: u32 = 0;
-/// Stream of the errors that a year's readings share.
-const YEARS_STREAM: u32 = 1;
-/// Stream of the readings' own errors.
-const READINGS_STREAM: u32 = 2;
 
 /// The readings of a place's snow site as a text table: a pillow's line a day, a course's line a visit that was made.
 ///
@@ -52,25 +48,11 @@ pub fn table(place: &Place, site: &SnowSite) -> Result<String, OpenLedger> {
 fn readings(place: &Place, site: &SnowSite) -> Result<Vec<(NaiveDate, f64)>, OpenLedger> {
     let days = draw(place);
     let swe_mm = site.swe_mm(place, &days)?;
-    let errors = &site.errors;
-    let mut year_draws = stream(errors.seed, YEARS_STREAM);
-    let mut reading_draws = stream(errors.seed, READINGS_STREAM);
-    let mut year = None;
-    let mut year_factor = 1.0;
-    let mut own = 0.0;
+    let mut factors = Factors::new(place, &site.errors);
     let mut readings = Vec::new();
     for date in visits(place, site) {
-        let began = date.year() - i32::from(date < place.start_in(date.year()));
-        if year.replace(began) != Some(began) {
-            let drawn: f64 = StandardNormal.sample(&mut year_draws);
-            year_factor = 1.0 + errors.year_sd * drawn;
-        }
-        let lag1 = errors.reading_lag1;
-        let drawn: f64 = StandardNormal.sample(&mut reading_draws);
-        own = lag1 * own + (1.0 - lag1 * lag1).sqrt() * drawn;
-        let factor = year_factor * (1.0 + errors.reading_sd * own);
         let at = days_between(days[0].date, date);
-        readings.push((date, (swe_mm[at] * factor).max(0.0)));
+        readings.push((date, (swe_mm[at] * factors.next(date)).max(0.0)));
     }
     Ok(readings)
 }

@@ -9,7 +9,7 @@ pub const FIRST_YEAR: i32 = 1984;
 /// Calendar year in which it ends, on the eve of a water year: forty of them.
 pub const LAST_YEAR: i32 = 2024;
 
-/// A basin, its station and the holes in the records of the station and of a snow site.
+/// A basin, its station and the holes in the records of the station, of a snow site and of a river.
 #[derive(Debug)]
 pub struct Place {
     /// Name of the basin.
@@ -137,6 +137,8 @@ pub enum Hole {
     All,
     /// The water in the snow at the snow site.
     SnowWater,
+    /// The flow of the river.
+    Flow,
 }
 
 /// A hole of `days` days from the day `from`.

@@ -1,5 +1,6 @@
 //! What an invented snow site is made of: plain numbers, and the water that its snow would have held.
 
+use super::errors::Errors;
 use super::place::Place;
 use super::weather::Day;
 use crate::basin::{Basin, GradientForm, Ground, PrecipitationGradient, TemperatureGradient};
@@ -47,19 +48,6 @@ pub enum Visits {
     },
     /// By a pillow under the snow, every day.
     Daily,
-}
-
-/// Errors of readings, all of them factors: bare ground reads 0.
-#[derive(Debug)]
-pub struct Errors {
-    /// Seed of their draws and of those of the visits' days.
-    pub seed: u64,
-    /// Standard deviation of the factor that all readings of a water year share.
-    pub year_sd: f64,
-    /// Standard deviation of a reading's own factor.
-    pub reading_sd: f64,
-    /// Correlation of that factor with the reading before's.
-    pub reading_lag1: f64,
 }
 
 impl SnowSite {
@@ -110,7 +98,7 @@ impl SnowSite {
 }
 
 /// The days as water years, each on the snow of the one before.
-fn whole_years(place: &Place, days: &[Day]) -> Series {
+pub(super) fn whole_years(place: &Place, days: &[Day]) -> Series {
     let mut weather = Series::default();
     let years = days.chunk_by(|_, day| day.date != place.start_in(day.date.year()));
     for year in years {

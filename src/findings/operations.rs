@@ -16,6 +16,7 @@ use super::measure::{Asked, MeasureFindings};
 use super::resample::Resamples;
 use super::yardstick::Levels;
 use crate::ensemble::OperatedSeasons;
+use crate::fit::InflowSkill;
 use crate::season::{Measure, NONE, NOT_REACHED};
 use ndarray::{ArrayView2, ArrayView3, Axis};
 use rayon::prelude::*;
@@ -89,6 +90,9 @@ pub struct Operations {
     /// What the snow foretells.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub outlook: Option<Outlook>,
+    /// How near modelled inflow of the record's own years comes to observed inflow; none where none was observed.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub inflow_skill: Option<InflowSkill>,
 }
 
 impl Operations {
@@ -148,6 +152,7 @@ impl Operations {
                 Outlook::of(measures, [questions.headline.1, volumes], levels, &resamples)
             }),
             inflow,
+            inflow_skill: None,
         }
     }
 

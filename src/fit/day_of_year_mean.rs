@@ -12,25 +12,42 @@ const LEAST_OTHER_YEARS: usize = 5;
 /// 1 is perfect, 0 no better than the mean; none where no day has readings of five other years. The mean knows years that a
 /// fit may not have seen.
 pub(super) fn skill(years: &[ComparedYear], is_judged: impl Fn(i32) -> bool) -> Option<f64> {
+    let days_of = |year: &ComparedYear| JudgedYear {
+        is_judged: is_judged(year.water_year),
+        days: year.days.iter().map(|pair| (pair.observed_mm, pair.modelled_mm)).collect(),
+    };
+    skill_of(&years.iter().map(days_of).collect::<Vec<_>>())
+}
+
+/// A year of one quantity, in any unit.
+pub(super) struct JudgedYear {
+    /// Whether its errors count; its observed values are in the means of other years in any case.
+    pub is_judged: bool,
+    /// Observed, where it was, and modelled, day by day.
+    pub days: Vec<(Option<f64>, f64)>,
+}
+
+/// The same of any quantity.
+pub(super) fn skill_of(years: &[JudgedYear]) -> Option<f64> {
     let longest = years.iter().map(|year| year.days.len()).max()?;
-    let (mut sums_mm, mut counts) = (vec![0.0; longest], vec![0_usize; longest]);
+    let (mut sums, mut counts) = (vec![0.0; longest], vec![0_usize; longest]);
     for year in years {
-        for (day, pair) in year.days.iter().enumerate() {
-            if let Some(observed_mm) = pair.observed_mm {
-                sums_mm[day] += observed_mm;
+        for (day, (observed, _)) in year.days.iter().enumerate() {
+            if let Some(observed) = observed {
+                sums[day] += observed;
                 counts[day] += 1;
             }
         }
     }
     let (mut of_model, mut of_mean) = (0.0, 0.0);
-    for year in years.iter().filter(|year| is_judged(year.water_year)) {
-        for (day, pair) in year.days.iter().enumerate() {
-            let Some(observed_mm) = pair.observed_mm.filter(|_| counts[day] > LEAST_OTHER_YEARS) else {
+    for year in years.iter().filter(|year| year.is_judged) {
+        for (day, (observed, modelled)) in year.days.iter().enumerate() {
+            let Some(observed) = observed.filter(|_| counts[day] > LEAST_OTHER_YEARS) else {
                 continue;
             };
-            let mean_mm = (sums_mm[day] - observed_mm) / (counts[day] - 1) as f64;
-            of_model += (pair.modelled_mm - observed_mm) * (pair.modelled_mm - observed_mm);
-            of_mean += (mean_mm - observed_mm) * (mean_mm - observed_mm);
+            let mean = (sums[day] - observed) / (counts[day] - 1) as f64;
+            of_model += (modelled - observed) * (modelled - observed);
+            of_mean += (mean - observed) * (mean - observed);
         }
     }
     (of_mean > 0.0).then(|| 1.0 - of_model / of_mean)

@@ -1,7 +1,8 @@
 //! The model against observed snow (method, section 12): how well the parameters in use reproduce what was measured.
 //!
 //! `scores` holds the published measures of agreement, `site` runs the model where the snow was measured, `year` takes
-//! one water year of both, `comparison` puts a site's years together. `place` takes any place day by day.
+//! one water year of both, `comparison` puts a site's years together. `place` takes any place day by day. `inflow` holds
+//! routed water input against observed inflow.
 
 mod comparison;
 mod day_of_year_mean;
@@ -9,6 +10,7 @@ mod dispersed;
 mod failing_sensor;
 mod held_against;
 mod hill;
+mod inflow;
 #[cfg(test)]
 mod invented;
 mod judged;
@@ -36,6 +38,9 @@ mod uncertainty;
 mod year;
 
 pub use comparison::{Bias, Comparison, DateError, SurveyBias};
+pub use inflow::{
+    InflowFit, InflowHalf, InflowRecord, InflowScores, InflowSkill, InflowYear, VolumeScores, inflow_skill,
+};
 pub use judged::{Held, Judged};
 pub use left_out::{LeftOut, Rule, left_out, without};
 pub use not_seen::not_seen;

@@ -11,4 +11,4 @@ mod routing;
 pub use linear::Store;
 pub use observed::{FlowColumn, FlowColumns, ObservedInflow, read};
 pub use route::{Router, WaterYear};
-pub use routing::{Routing, SlowStore};
+pub use routing::{LONGEST_RECESSION_DAYS, Routing, SlowStore};

@@ -1,8 +1,10 @@
 //! Observed inflow: a file of daily flows becomes hm3 a day, by date, with every cell that cannot be read.
 
+use crate::calendar::date_of;
 use crate::fault::{Fault, Unlikely};
 use crate::table::{DateColumn, DateReader, Format, Row, Table, Tally};
 use crate::units::FlowUnit;
+use crate::weather::{Series, YearSpan};
 use chrono::NaiveDate;
 use std::collections::BTreeMap;
 
@@ -118,6 +120,32 @@ fn read_flow(
 }
 
 impl ObservedInflow {
+    /// First and last day with a reading.
+    pub fn first_and_last(&self) -> Option<[NaiveDate; 2]> {
+        let [first, last] = [self.hm3_a_day.first_key_value(), self.hm3_a_day.last_key_value()];
+        Some([*first?.0, *last?.0])
+    }
+
+    /// Days with a reading in the water years in use.
+    pub fn days_in(&self, weather: &Series) -> usize {
+        let of_year =
+            |year: &YearSpan| self.hm3_a_day.range(year.first..date_of(year.first, year.days + 1)).count();
+        weather.years.iter().map(of_year).sum()
+    }
+
+    /// What to say where no reading lies in the water years in use.
+    pub fn unused(&self, weather: &Series) -> Option<Unlikely> {
+        let [first, last] = self.first_and_last()?;
+        (self.days_in(weather) == 0).then(|| {
+            Unlikely::new(
+                "inflow.observed.file",
+                format!(
+                    "no reading from {first} to {last} lies in a water year in use: nothing to hold modelled inflow against"
+                ),
+            )
+        })
+    }
+
     /// What is unlikely about it, of a basin that gets so much precipitation in a mean year, hm3.
     pub fn unlikely(&self, yearly_precipitation_hm3: f64) -> Vec<Unlikely> {
         const KEY: &str = "inflow.observed";

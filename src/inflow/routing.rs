@@ -24,8 +24,8 @@ pub struct Routing {
     pub slow: Option<SlowStore>,
 }
 
-/// Keeps water longer than it is told.
-const LONGEST_RECESSION_DAYS: f64 = 2000.0;
+/// No store keeps water longer, days.
+pub const LONGEST_RECESSION_DAYS: f64 = 2000.0;
 
 impl Routing {
     /// Everything that is wrong with it, and what is unlikely.

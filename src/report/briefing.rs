@@ -5,6 +5,7 @@ mod assumed;
 mod elevation;
 mod explorer;
 mod generator_sheet;
+mod inflow_skill;
 mod levels;
 mod normal;
 mod observed;
@@ -146,6 +147,7 @@ fn groups(
             [
                 part(observed::ADDRESS, "Observed snow", observed::section(study, of_sites)),
                 part(warm_years::ADDRESS, "How the fit did", warm_years::section(study)),
+                part(inflow_skill::ADDRESS, "Modelled against observed inflow", inflow_skill::skill(study)),
                 part("parameters", "If other parameters were right", parameters::section(study, answer)),
                 part("rules", "If the model's rules were others", rule_panel::section(study, figures)),
             ],

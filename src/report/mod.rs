@@ -29,7 +29,7 @@ mod workbook;
 
 pub use answer::{Answer, answer_in_words, period_name};
 pub use briefing::{briefing_html, second_looks};
-pub use checked::Checked;
+pub use checked::{Checked, InflowFile};
 pub use daily::{DailyError, daily_csv};
 pub use data_package::data_package_json;
 pub use fit::{FitReport, fit_files, fit_in_words, fit_manifest_json, left_out_lines};

@@ -10,6 +10,7 @@ use crate::basin::BeyondStations;
 use crate::defaults::DefaultInForce;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
+use crate::inflow::Routing;
 use crate::perturb::Warming;
 use crate::season::{Outcome, SeasonSettings};
 use crate::snow::{GaugeMultiplier, SnowParams};
@@ -156,6 +157,8 @@ struct Parameters<'a> {
     fitted: Option<FittedFrom<'a>>,
     #[serde(skip_serializing_if = "Option::is_none")]
     parameter_sets: Option<SetsFrom<'a>>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    inflow: Option<RoutingInForce>,
     levels_c: &'a [f64],
     reference_c: f64,
     warming: &'a Warming,
@@ -163,6 +166,16 @@ struct Parameters<'a> {
     baseline_years: Option<&'a BaselineYears>,
     realizations: Realizations,
     report_units: UnitSystem,
+}
+
+/// How water input becomes inflow.
+#[derive(Serialize)]
+struct RoutingInForce {
+    #[serde(flatten)]
+    routing: Routing,
+    is_fitted: bool,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    stated: Option<Routing>,
 }
 
 #[derive(Serialize)]
@@ -215,6 +228,7 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
             is_fitted: study.fitted.is_some_and(|fitted| !fitted.taken.is_empty()),
             fitted: study.fitted,
             parameter_sets: study.parameter_sets,
+            inflow: study.routing.map(|routing| routing_in_force(routing, findings)),
             levels_c: &findings.levels_c,
             reference_c: findings.levels_c[findings.reference],
             warming: study.warming,
@@ -235,6 +249,12 @@ pub fn manifest_json(study: &Study<'_>, files: &[&str]) -> serde_json::Result<Ve
         left_out: LeftOut { counts: study.record.counts, water_years: study.record.skipped },
         files: files.to_vec(),
     })
+}
+
+fn routing_in_force(routing: Routing, findings: &Findings) -> RoutingInForce {
+    let skill = findings.operations.as_ref().and_then(|found| found.inflow_skill.as_ref());
+    let stated = skill.and_then(|skill| skill.fit.as_ref()).map(|fit| fit.stated);
+    RoutingInForce { routing, is_fitted: stated.is_some(), stated }
 }
 
 #[derive(Serialize)]

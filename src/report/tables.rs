@@ -12,6 +12,7 @@ mod dry_and_warm;
 mod elasticities;
 mod generator_sheet;
 mod ground;
+mod inflow_skill;
 mod lines;
 mod measures;
 mod operations;
@@ -74,6 +75,9 @@ pub fn tables(study: &Study<'_>) -> Vec<ReportFile> {
         if !surface.named.is_empty() {
             add("named-changes", response_surface::named_changes(surface, units));
         }
+    }
+    if let Some(skill) = findings.operations.as_ref().and_then(|found| found.inflow_skill.as_ref()) {
+        add("inflow-skill", inflow_skill::inflow_skill(skill, units));
     }
     if !findings.tipping_levels.is_empty() {
         add("criteria", criteria::criteria(&findings.tipping_levels, units));

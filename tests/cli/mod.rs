@@ -22,6 +22,7 @@ mod help;
 pub mod hostile_names;
 mod humidity;
 mod identities;
+mod inflow;
 mod intensity;
 mod interrupt;
 mod keys;

@@ -2,6 +2,7 @@
 
 use super::super::SCHEMA_VERSION;
 use super::Checked;
+use super::inflow::InflowFile;
 use super::observed::SiteDocument;
 use crate::baseline::{Baseline, BaselineYears, Detrended, wilson};
 use crate::basin::{Band, BeyondStations, PrecipitationGradient};
@@ -44,6 +45,8 @@ struct Document<'a> {
     baseline_years: &'a BaselineYears,
     detrended: Option<&'a Detrended>,
     observed_swe: Vec<SiteDocument<'a>>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    observed_inflow: Option<&'a InflowFile<'a>>,
     season: &'a SeasonSettings,
     snow: &'a SnowParams,
     fitted: Option<FittedFrom<'a>>,
@@ -125,6 +128,7 @@ impl Checked<'_> {
             baseline_years: self.baseline_years,
             detrended: self.detrended,
             observed_swe: self.sites.iter().map(SiteDocument::of).collect(),
+            observed_inflow: self.inflow.as_ref(),
             season: self.season,
             snow: self.snow,
             fitted: self.fitted,

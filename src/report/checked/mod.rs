@@ -4,8 +4,11 @@ mod baseline;
 mod document;
 mod elevation;
 mod generator_sheet;
+mod inflow;
 mod observed;
 mod record;
+
+pub use inflow::InflowFile;
 
 use super::numbers::{counted, fixed, signed};
 use super::reader::Reader;
@@ -58,6 +61,8 @@ pub struct Checked<'a> {
     pub detrended: Option<&'a Detrended>,
     /// Sites with observed snow.
     pub sites: Vec<Site<'a>>,
+    /// The file of observed inflow.
+    pub inflow: Option<InflowFile<'a>>,
     /// What is in force from a file of fitted parameters.
     pub fitted: Option<FittedFrom<'a>>,
     /// Sets of parameters that a study would run beside its own.
@@ -141,6 +146,7 @@ impl Checked<'_> {
         self.write_elevation(&mut page);
         self.write_baseline(&mut page);
         self.write_observed(&mut page);
+        self.write_inflow(&mut page);
         self.write_levels(&mut page);
         page.head("Snow model");
         match self.fitted {

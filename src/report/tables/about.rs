@@ -68,6 +68,10 @@ const ABOUT: &[(&str, &str)] = &[
         "inflow",
         "Inflow, or water input routed, by measure and level: quantiles over realizations, paired shift, whether warming outweighs.",
     ),
+    (
+        "inflow-skill",
+        "Modelled against observed inflow by routing and years: scores, and the routing's parameters.",
+    ),
     ("low-runs", "Chance that a realization holds low years in a row, by length and level."),
     ("low-snow-in-the-record", "Low-snow years among the record's own, run at every level."),
     ("low-snow-odds", "Chance of a low-snow year by level, and its ratio to the reference's."),
