@@ -126,7 +126,7 @@ fn describe<'a>(
         snow: &scenario.snow,
         fitted: ready.fitted_from(),
         parameter_sets: ready.sets_from(),
-        routing: ready.operation.as_ref().map(|operation| operation.routing),
+        operation: ready.operation.as_ref(),
         warming: &scenario.warming.warming,
         mean_change_sd_pct: scenario.realizations.mean_change_sd_pct,
         generator: scenario.realizations.generator,

@@ -9,7 +9,7 @@ use crate::ensemble::RecordYear;
 use crate::fault::Unlikely;
 use crate::findings::Findings;
 use crate::fit::{SkillInShort, Value};
-use crate::inflow::Routing;
+use crate::operation::Operation;
 use crate::perturb::{GeneratorChoice, Warming};
 use crate::season::{Measure, SeasonSettings};
 use crate::snow::{GaugeMultiplier, SnowParams};
@@ -40,8 +40,8 @@ pub struct Study<'a> {
     pub fitted: Option<FittedFrom<'a>>,
     /// Sets of parameters that were run beside the study's own.
     pub parameter_sets: Option<SetsFrom<'a>>,
-    /// How water input becomes inflow, where that is asked: as fitted where it was fitted.
-    pub routing: Option<Routing>,
+    /// What becomes of the water, where it is asked; its routing the one in force.
+    pub operation: Option<&'a Operation>,
     /// Warming's shape and precipitation.
     pub warming: &'a Warming,
     /// Assumed standard deviation of the change of mean precipitation, percent.
