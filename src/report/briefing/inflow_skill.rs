@@ -148,13 +148,16 @@ fn row(name: &str, scores: &InflowScores, reader: Reader) -> Markup {
     } }
 }
 
+/// A parameter of a routing in words.
+type Told = fn(&Routing) -> String;
+
 /// What was searched for: as stated, and what was found on all years and on each half.
 fn parameters(found: &InflowSkill, fit: &InflowFit) -> Markup {
     let halves = fit.halves.iter().map(|half| (half.fitted_on.words(), &half.routing));
     let columns =
         [("as stated", &fit.stated), ("all years, in use", &found.routing)].into_iter().chain(halves);
     let columns: Vec<(&str, &Routing)> = columns.collect();
-    let rows: [(&str, fn(&Routing) -> String); 4] = [
+    let rows: [(&str, Told); 4] = [
         ("share of the water that runs off", share_of_months),
         ("days in which inflow falls to 1/e", |routing| fixed(routing.recession_days, 1)),
         ("share of it that passes the slow store", |routing| of_slow(routing, |slow| fixed(slow.share, 2))),
