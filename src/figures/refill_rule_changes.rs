@@ -68,7 +68,7 @@ fn panel(operations: &Operations, shown: &Shown, name: &'static str, units: Unit
     let levels = shown.all();
     let ends = operations.rule_changes.iter().filter_map(|of| measure(of, name)).flat_map(|found| {
         levels.iter().filter_map(|at| found.levels.get(*at)).flat_map(|found| {
-            [found.periods.q05, found.periods.q50, found.periods.q95].into_iter().filter_map(|of| of.value())
+            [found.periods.q05, found.periods.q50, found.periods.q95].into_iter().filter_map(Outcome::value)
         })
     });
     let [low, high] = ends.fold([f64::INFINITY, f64::NEG_INFINITY], |[low, high], value| {
@@ -79,7 +79,7 @@ fn panel(operations: &Operations, shown: &Shown, name: &'static str, units: Unit
     }
     // Nothing is more reliable than always, and nothing spills less than nothing.
     let [low, high] =
-        if is_share { [low.min(99.0).max(0.0), 100.0] } else { [0.0, if high > 0.0 { high } else { 1.0 }] };
+        if is_share { [low.clamp(0.0, 99.0), 100.0] } else { [0.0, if high > 0.0 { high } else { 1.0 }] };
     let axis = if is_share {
         "Reliability by volume (%)".to_owned()
     } else {

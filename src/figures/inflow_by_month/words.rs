@@ -35,9 +35,9 @@ impl Words {
         let up_to = level(units, *findings.levels_c.last()?);
         let described = shown.all().into_iter().map(|at| {
             let shares = months.iter().filter_map(|month| {
-                Some(format!("{} {} %", month.name, percent_size(median_pct(month, at)?)))
+                Some(format!("{}: {} %", month.name, percent_size(median_pct(month, at)?)))
             });
-            format!("{}: {}", name(findings, at, units), shares.collect::<Vec<_>>().join(", "))
+            format!("{}, {}", name(findings, at, units), shares.collect::<Vec<_>>().join(", "))
         });
         let observed = if operations.inflow_is_observed {
             ""

@@ -36,9 +36,9 @@ impl Words {
         let described = shown.all().into_iter().map(|at| {
             let on_days = days.iter().filter_map(|on| {
                 let hm3 = on.found.levels.get(at)?.periods.q50.value()?;
-                Some(format!("{} {}", date(on, setting), said(hm3)))
+                Some(format!("{}: {}", date(on, setting), said(hm3)))
             });
-            format!("{}: {}", name(findings, at, units), on_days.collect::<Vec<_>>().join(", "))
+            format!("{}, {}", name(findings, at, units), on_days.collect::<Vec<_>>().join(", "))
         });
         let rule = if pool.not_above_hm3.is_empty() {
             "No space is kept for floods."
