@@ -8,7 +8,7 @@ use super::ready::{Ready, mean_yearly_mm, recipe_of};
 use crate::baseline::{BASELINE_YEARS_KEY, Baseline, BaselineChoice, BaselineYears, LEAST_YEARS, detrend};
 use crate::basin::{Basin, GroundStated};
 use crate::defaults::DefaultInForce;
-use crate::fault::Fault;
+use crate::fault::{Fault, Unlikely};
 use crate::findings::NamedChange;
 use crate::inflow::ObservedInflow;
 use crate::observed::Observations;
@@ -132,6 +132,7 @@ pub(super) fn assemble(path: &Path, shared: &Shared) -> Result<Ready, Failure> {
             let is_observed = observed_inflow.is_some() && unused.is_none();
             unlikely.extend(observed_inflow.iter().flat_map(|observed| observed.unlikely(yearly_hm3)));
             unlikely.extend(unused);
+            unlikely.extend(classes_without_window(&scenario));
             let operation = operation_of(&scenario, basin.area_km2(), is_observed);
             let mut defaults = draft.defaults;
             note_baseline_years(&baseline_years, &mut defaults);
@@ -201,6 +202,17 @@ fn read_record_of(draft: &Draft, folder: &Path) -> Result<Option<(Record, InputF
         &typed.limits,
     )?;
     Ok(Some((record, file)))
+}
+
+/// Classes of years by a window's inflow where there is no window.
+fn classes_without_window(scenario: &Scenario) -> Option<Unlikely> {
+    let limits = scenario.inflow.as_ref().map(|inflow| inflow.year_class_limits_hm3.len())?;
+    (limits > 0 && scenario.season.volume_windows.is_empty()).then(|| {
+        Unlikely::new(
+            "inflow",
+            "limits of classes of years are stated, and season.volume_windows has no window whose inflow they are of: there are no classes",
+        )
+    })
 }
 
 /// What becomes of the water, where the scenario asks it.

@@ -177,6 +177,7 @@ fn operations(ready: &Ready, study: &Seasons, held: &Seasons) -> Option<Operatio
         seed: scenario.seed,
         inflow_is_observed: operation.settings.is_observed,
         year_class_limits_hm3: limits.unwrap_or_default(),
+        foretold_window: operation.settings.window_from(scenario.season.survey_dates[0]),
         word: operation.settings.word(),
         reservoir: operation.reservoir.as_ref().map(|reservoir| reservoir.name.as_str()),
         pool: pool.as_ref(),

@@ -10,6 +10,9 @@ pub const RELIABILITY: &str = "reliability_volume_share";
 /// A smaller share of what is taken is nothing: half a percent.
 pub const LEAST_BROUGHT_BACK: f64 = 0.005;
 
+/// From this share on all is brought back, as it is told.
+pub const ALL_BROUGHT_BACK: f64 = 0.995;
+
 /// `as stated`, `refill 30 days earlier`, `flood space × 0.5`, `demand × 0.9`.
 pub fn change_in_words(change: Change) -> String {
     let factor = |factor: f64| {
@@ -41,13 +44,21 @@ pub(super) fn changed<'a>(of: &'a RuleChange, name: &str, at: usize) -> Option<&
 }
 
 /// The change that brings back most of what warming takes of reliability by volume at a level, and how much: of those that move the
-/// refill, or, where none of them brings back anything, of all. Nothing where warming takes next to nothing.
-pub fn brought_back(operations: &Operations, at: usize) -> Option<(Change, Ranged)> {
+/// refill, or, where none of them brings back anything, of those that keep the demand as it is: less demand is met more easily, which
+/// brings no water back. Nothing where warming takes next to nothing, or where the medians, as they are told to a tenth of a
+/// percent, do not fall.
+pub fn brought_back(operations: &Operations, [reference, at]: [usize; 2]) -> Option<(Change, Ranged)> {
+    let as_stated = operations.rule_changes.first()?;
+    let told = |at: usize| Some((1000.0 * changed(as_stated, RELIABILITY, at)?.periods.q50.value()?).round());
+    if told(at)? >= told(reference)? {
+        return None;
+    }
     let found = |of: &RuleChange| Some((of.change, changed(of, RELIABILITY, at)?.brought_back?));
     let most = |moves_refill: bool| {
         let asked = operations
             .rule_changes
             .iter()
+            .filter(|of| !matches!(of.change, Change::DemandTimes(_)))
             .filter(|of| !moves_refill || matches!(of.change, Change::RefillMovedDays(_)));
         asked.filter_map(found).max_by(|a, b| a.1.value.total_cmp(&b.1.value))
     };

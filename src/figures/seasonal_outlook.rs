@@ -87,11 +87,16 @@ fn title(findings: &Findings, outlook: &Outlook, shown: &Shown, units: UnitSyste
     let Some(after) = explained_pct(found) else {
         return Some(format!("At {place}, {snow} or {inflow} does not vary: nothing to foretell"));
     };
-    // Half a percent more or less is as much.
+    // Less or more is told where the ranges of both lie apart, and by half a percent.
+    let lie_apart = |low: &OutlookLevel, high: &OutlookLevel| {
+        let ends = low.correlation.and_then(|r| r.q95).zip(high.correlation.and_then(|r| r.q05));
+        ends.is_some_and(|(low, high)| low < high)
+    };
     let how = match after - before {
-        ..=-0.5 => "explains less of",
-        0.5.. => "explains more of",
-        _ => "explains as much of",
+        ..=-0.5 if lie_apart(found, reference) => "explains less of",
+        0.5.. if lie_apart(reference, found) => "explains more of",
+        -0.5..=0.5 => "explains as much of",
+        _ => "may explain another share of",
     };
     Some(format!(
         "At {place}, {snow} {how} {inflow}: {} % of its variance, {} % at the reference",
@@ -126,7 +131,8 @@ fn words(
         title: title(findings, outlook, shown, units)?,
         ensemble: format!("{}: {years} single years a level.{which}", ensemble(findings)),
         key: "Left: higher is better foretold. Right: the interval about a straight line through all years that holds 9 of 10 of them; lower is \
-              better foretold. Line through a mark: 5–95 % over resampled realizations, not day-to-day variation."
+              better foretold. Line through a mark: 5–95 % over resampled realizations, not day-to-day variation. Years of all realizations are \
+              taken together, and so is the assumed change of mean precipitation where there is one."
             .to_owned(),
         caption: format!(
             "How closely {inflow} follows {snow} over {years} single years at each warming level, those of {}.{which} Left: Pearson's \

@@ -37,6 +37,8 @@ pub struct OperationsQuestions<'a> {
     pub inflow_is_observed: bool,
     /// Volumes of the first window at which one class of years ends and the next begins, ascending, hm3.
     pub year_class_limits_hm3: &'a [f64],
+    /// Which of the windows the survey date's snow may foretell: one that does not begin before it.
+    pub foretold_window: Option<usize>,
     /// What inflow is called: what was not observed is not called so.
     pub word: &'a str,
     /// The name of the reservoir, if there is one.
@@ -147,7 +149,8 @@ impl Operations {
                 let limits = questions.year_class_limits_hm3;
                 YearClasses::of(&operated.yearly[at], &volumes, limits, levels, &resamples)
             }),
-            outlook: window.zip(volumes).and_then(|(at, volumes)| {
+            outlook: questions.foretold_window.and_then(|at| {
+                let volumes = operated.years.index_axis(Axis(1), at);
                 let measures = [questions.headline.0, &operated.yearly[at]];
                 Outlook::of(measures, [questions.headline.1, volumes], levels, &resamples)
             }),

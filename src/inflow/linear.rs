@@ -23,6 +23,12 @@ impl Store {
         Self { remains: 1.0 - falls, kept: recession_days * falls }
     }
 
+    /// What it holds as years like one begin and end alike: `held` is what such a year of so many days leaves in an empty store, to
+    /// which every year adds, of which each leaves `exp(-days/K)` to the next.
+    pub fn year_after_year(self, held: f64, days: usize) -> f64 {
+        held / (1.0 - libm::pow(self.remains, days as f64))
+    }
+
     /// One day: what it holds as the day ends, and what has run out. Any unit of water; the two add up to what there was.
     #[inline(always)]
     pub fn day(self, held: f64, water: f64) -> (f64, f64) {
@@ -63,6 +69,16 @@ mod tests {
             (held, last) = store.day(held, 2.0);
         }
         assert!((last - 2.0).abs() < 1e-9 && (held - 60.0).abs() < 1e-7, "{last} and {held}");
+    }
+
+    /// An identity: a year that begins with it ends with it. With a recession of 1000 days one year alone would leave 31 % of it.
+    #[test]
+    fn years_that_are_alike_begin_as_they_end() {
+        let store = Store::new(1000.0);
+        let year = |from: f64| (0..365).fold(from, |held, day| store.day(held, f64::from(day % 7)).0);
+        let begun = store.year_after_year(year(0.0), 365);
+        assert!((year(begun) / begun - 1.0).abs() < 1e-12 && year(0.0) < 0.32 * begun, "{begun}");
+        assert_eq!(Store::new(0.0).year_after_year(0.0, 365), 0.0);
     }
 
     #[test]

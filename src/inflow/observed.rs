@@ -1,6 +1,7 @@
 //! Observed inflow: a file of daily flows becomes hm3 a day, by date, with every cell that cannot be read.
 
 use crate::calendar::date_of;
+use crate::calendar::days_between;
 use crate::fault::{Fault, Unlikely};
 use crate::table::{DateColumn, DateReader, Format, Row, Table, Tally};
 use crate::units::FlowUnit;
@@ -161,7 +162,10 @@ impl ObservedInflow {
             ));
         }
         let yearly_hm3 = 365.25 * self.hm3_a_day.values().sum::<f64>() / days as f64;
-        if days >= 365 && yearly_hm3 > 1.2 * yearly_precipitation_hm3 {
+        let span = self.hm3_a_day.keys().next().zip(self.hm3_a_day.keys().next_back());
+        // A gauge that is read in the melt season alone has no yearly mean.
+        let is_whole = span.is_some_and(|(from, to)| 10 * days >= 9 * (days_between(*from, *to) + 1));
+        if days >= 365 && is_whole && yearly_hm3 > 1.2 * yearly_precipitation_hm3 {
             unlikely.push(Unlikely::new(
                 KEY,
                 format!(

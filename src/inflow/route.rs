@@ -45,11 +45,15 @@ impl Router {
         self.held_hm3[0][column] + self.held_hm3[1][column]
     }
 
-    /// Empties the stores, and fills them with a year that is run for nothing else: a realization begins with water on its way
-    /// as after a year like its first.
+    /// Fills the stores as if all years before had been like this one, which is run for nothing else: a realization begins with
+    /// the water on its way that years like its first leave.
     pub fn begin(&mut self, first: &WaterYear<'_>, inflow_hm3: &mut Vec<f64>) {
         self.held_hm3.iter_mut().for_each(|held| held.fill(0.0));
         self.year(first, inflow_hm3);
+        let days = first.days(self.held_hm3[0].len());
+        for (store, held) in self.stores.iter().zip(&mut self.held_hm3) {
+            held.iter_mut().for_each(|held| *held = store.year_after_year(*held, days));
+        }
     }
 
     /// Routes a year; `inflow_hm3` becomes its inflow, `[day][column]`, hm3 a day.

@@ -26,6 +26,7 @@ pub(super) struct AllBooks {
     demanded_hm3: f64,
     shortage_hm3: f64,
     spill_hm3: f64,
+    unused_hm3: f64,
     encroached_days: f64,
     years: f64,
     short_years: f64,
@@ -134,9 +135,18 @@ const OF_CHANGES: [(Entry, Better); CHANGED] = [
     ),
     (
         Entry {
+            kind: Kind::VolumeHm3,
+            name: "unused_hm3",
+            title: "water passed on unused a year, spill and release that nothing asked for",
+            of: |books| books.unused_hm3 / books.years,
+        },
+        Better::Less,
+    ),
+    (
+        Entry {
             kind: Kind::DayCount,
             name: "flood_space_encroached_days",
-            title: "days a year above the flood-space rule",
+            title: "days a year above the stated flood-space rule",
             of: |books| books.encroached_days / books.years,
         },
         Better::Less,
@@ -145,7 +155,7 @@ const OF_CHANGES: [(Entry, Better); CHANGED] = [
 ];
 
 /// How many measures are told of every change of the rules.
-pub const CHANGED: usize = 6;
+pub const CHANGED: usize = 7;
 
 /// The measures of a whole realization.
 pub(super) fn list() -> Vec<Measure> {
@@ -191,6 +201,7 @@ impl AllBooks {
         self.demanded_hm3 += year.demanded_hm3;
         self.shortage_hm3 += year.shortage_hm3;
         self.spill_hm3 += year.spill_hm3;
+        self.unused_hm3 += year.unused_hm3;
         self.encroached_days += year.encroached_days;
         self.short_years += if year.short_days > 0.0 { 1.0 } else { 0.0 };
         self.unfilled_years += if year.fill_day.is_finite() { 0.0 } else { 1.0 };
@@ -231,6 +242,7 @@ mod tests {
                 evaporated_hm3: 0.0,
                 minimum_hm3: 0.0,
                 flood_hm3: 0.0,
+                unasked_hm3: 0.0,
                 for_demand_hm3: 10.0 - missing,
                 spill_hm3: 0.0,
                 shortage_hm3: missing,

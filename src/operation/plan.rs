@@ -35,6 +35,13 @@ impl OperationSettings {
         if self.is_observed { "inflow" } else { "water input, routed," }
     }
 
+    /// The first window that does not begin before a day of the water year; the windows' volumes come first among the measures.
+    pub fn window_from(&self, day: MonthDay) -> Option<usize> {
+        let first = self.water_year_starts.first_day(2001);
+        let at = |day: MonthDay| crate::calendar::day_of_water_year(first, day);
+        self.volume_windows.iter().position(|[from, _]| at(*from) >= at(day))
+    }
+
     /// The months, 0 for January, from the water year's first day on.
     pub(super) fn months(&self) -> impl Iterator<Item = usize> + Clone {
         let first = self.water_year_starts.0.month() as usize - 1;

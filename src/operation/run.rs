@@ -67,7 +67,7 @@ impl Operation {
 
     /// Runs the years of a realization, in their order, at so many levels.
     ///
-    /// The first year is routed once before, so that water is on its way; the reservoir begins with its stated storage.
+    /// The stores begin as years like the first leave them, so that water is on its way; the reservoir begins with its stated storage.
     ///
     /// # Errors
     /// A water balance that does not close: a fault of ours.
@@ -148,6 +148,8 @@ impl<'a> Stored<'a> {
             }
             let evaporation_hm3 = self.reservoir.evaporation_hm3_per_day[*month];
             let minimum_hm3 = self.reservoir.minimum_release_hm3_per_day[*month];
+            // The rules as stated come first.
+            let stated_rule_hm3 = self.rules[0].not_above_hm3[*common];
             for column in &mut self.columns {
                 let rules = &self.rules[column.change];
                 let day = Day {
@@ -159,7 +161,7 @@ impl<'a> Stored<'a> {
                 };
                 let out = step(&self.pool, column.storage_hm3, &day);
                 column.storage_hm3 = out.storage_hm3;
-                column.year.enter((number + 1) as f64, &day, &out, self.full_hm3);
+                column.year.enter((number + 1) as f64, &day, &out, (self.full_hm3, stated_rule_hm3));
                 column.all.enter(&day, &out);
             }
         }

@@ -22,6 +22,7 @@ pub(super) struct YearBooks {
     pub released_hm3: f64,
     pub flood_hm3: f64,
     pub spill_hm3: f64,
+    pub unused_hm3: f64,
     pub encroached_days: f64,
     pub encroached_most_hm3: f64,
     pub evaporated_hm3: f64,
@@ -35,7 +36,7 @@ struct Entry {
     of: fn(&YearBooks) -> f64,
 }
 
-const ENTRIES: [Entry; 12] = [
+const ENTRIES: [Entry; 13] = [
     Entry {
         kind: Kind::VolumeHm3,
         name: "storage_year_end_hm3",
@@ -51,7 +52,7 @@ const ENTRIES: [Entry; 12] = [
     Entry {
         kind: Kind::ArrivalDay,
         name: "fill_day",
-        title: "day on which the reservoir is full",
+        title: "first day on which the reservoir is full",
         of: |books| books.fill_day,
     },
     Entry { kind: Kind::VolumeHm3, name: "shortage_hm3", title: "shortage", of: |books| books.shortage_hm3 },
@@ -62,6 +63,12 @@ const ENTRIES: [Entry; 12] = [
         of: |books| books.short_days,
     },
     Entry { kind: Kind::VolumeHm3, name: "spill_hm3", title: "spill", of: |books| books.spill_hm3 },
+    Entry {
+        kind: Kind::VolumeHm3,
+        name: "unused_hm3",
+        title: "water passed on unused, spill and release that nothing asked for",
+        of: |books| books.unused_hm3,
+    },
     Entry {
         kind: Kind::VolumeHm3,
         name: "release_hm3",
@@ -77,13 +84,13 @@ const ENTRIES: [Entry; 12] = [
     Entry {
         kind: Kind::DayCount,
         name: "flood_space_encroached_days",
-        title: "days above the flood-space rule",
+        title: "days above the stated flood-space rule",
         of: |books| books.encroached_days,
     },
     Entry {
         kind: Kind::VolumeHm3,
         name: "flood_space_encroached_most_hm3",
-        title: "most storage above the flood-space rule",
+        title: "most storage above the stated flood-space rule",
         of: |books| books.encroached_most_hm3,
     },
     Entry {
@@ -125,6 +132,7 @@ impl YearBooks {
             released_hm3: 0.0,
             flood_hm3: 0.0,
             spill_hm3: 0.0,
+            unused_hm3: 0.0,
             encroached_days: 0.0,
             encroached_most_hm3: 0.0,
             evaporated_hm3: 0.0,
@@ -132,9 +140,9 @@ impl YearBooks {
     }
 
     /// Enters a day, the `number`th of the year; full is what holds at least `full_hm3` as it ends, to a cubic metre: a release
-    /// down to the capacity may round below it.
+    /// down to the capacity may round below it. Whatever rule is run, encroachment is that of the stated one.
     #[inline(always)]
-    pub fn enter(&mut self, number: f64, day: &Day, out: &Outcome, full_hm3: f64) {
+    pub fn enter(&mut self, number: f64, day: &Day, out: &Outcome, (full_hm3, stated_rule_hm3): (f64, f64)) {
         self.ledger.enter(day.inflow_hm3, out);
         self.storage_hm3 = out.storage_hm3;
         self.lowest_hm3 = self.lowest_hm3.min(out.storage_hm3);
@@ -147,7 +155,8 @@ impl YearBooks {
         self.released_hm3 += out.minimum_hm3 + out.flood_hm3 + out.for_demand_hm3;
         self.flood_hm3 += out.flood_hm3;
         self.spill_hm3 += out.spill_hm3;
-        let above_hm3 = out.storage_hm3 - day.not_above_hm3;
+        self.unused_hm3 += out.spill_hm3 + out.unasked_hm3;
+        let above_hm3 = out.storage_hm3 - stated_rule_hm3;
         self.encroached_days += counted(above_hm3 > LEAST_HM3);
         self.encroached_most_hm3 = self.encroached_most_hm3.max(above_hm3);
         self.evaporated_hm3 += out.evaporated_hm3;

@@ -149,7 +149,7 @@ pub(super) fn terms(reader: Reader) -> [(&'static str, String); 48] {
         ),
         (
             "Reliability",
-            "by time: share of days on which demand is met in full; by volume: share of what is demanded that is supplied",
+            "by time: share of days on which demand is met in full, those without demand among them; by volume: share of what is demanded that is supplied",
         ),
         ("Resilience", "share of days of shortage that a day without shortage follows"),
         (

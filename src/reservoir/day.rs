@@ -39,6 +39,8 @@ pub struct Outcome {
     pub minimum_hm3: f64,
     /// Released to make flood space.
     pub flood_hm3: f64,
+    /// Of that, what served no demand.
+    pub unasked_hm3: f64,
     /// Released, beyond both, for the demand.
     pub for_demand_hm3: f64,
     /// What ran over.
@@ -67,8 +69,8 @@ pub fn step(pool: &Pool, storage_hm3: f64, day: &Day) -> Outcome {
     let outlets_left = pool.release_capacity_hm3 - minimum_hm3;
     let over_rule = (there - minimum_hm3 - day.not_above_hm3).max(0.0);
     let flood_hm3 = over_rule.min(outlets_left).min(above_dead - minimum_hm3);
-    let served = pool.minimum_serves * minimum_hm3 + flood_hm3;
-    let asked = (day.demand_hm3 - served).max(0.0);
+    let not_served_hm3 = (day.demand_hm3 - pool.minimum_serves * minimum_hm3).max(0.0);
+    let asked = (not_served_hm3 - flood_hm3).max(0.0);
     let for_demand_hm3 =
         asked.min(outlets_left - flood_hm3).min(above_dead - minimum_hm3 - flood_hm3).max(0.0);
     let left = there - minimum_hm3 - flood_hm3 - for_demand_hm3;
@@ -78,6 +80,7 @@ pub fn step(pool: &Pool, storage_hm3: f64, day: &Day) -> Outcome {
         evaporated_hm3,
         minimum_hm3,
         flood_hm3,
+        unasked_hm3: (flood_hm3 - not_served_hm3).max(0.0),
         for_demand_hm3,
         spill_hm3: left - storage_hm3,
         shortage_hm3: asked - for_demand_hm3,

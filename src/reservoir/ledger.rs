@@ -55,6 +55,7 @@ mod tests {
             evaporated_hm3: 1.0,
             minimum_hm3: 2.0,
             flood_hm3: 3.0,
+            unasked_hm3: 0.0,
             for_demand_hm3: 4.0,
             spill_hm3: 5.0,
             shortage_hm3: 100.0,

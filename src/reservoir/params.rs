@@ -2,7 +2,8 @@
 
 use super::day::Pool;
 use super::rule::{FloodRule, RulePoint};
-use crate::fault::{Fault, within};
+use crate::calendar::MONTHS;
+use crate::fault::{Fault, Unlikely, within};
 use serde::Serialize;
 
 /// What is asked of a reservoir, a month each, January first, hm3 a day.
@@ -136,6 +137,40 @@ impl Reservoir {
         let mend = "a share of the capacity";
         within(&mut faults, "reservoir.full_share", self.full_share, 0.5..=1.0, "", mend);
         if faults.is_empty() { Ok(()) } else { Err(faults) }
+    }
+
+    /// What it cannot do of what is asked of it.
+    pub fn unlikely(&self) -> Vec<Unlikely> {
+        let mut unlikely = Vec::new();
+        let on_top = |month: usize| match self.demand_hm3_per_day {
+            Demand::OnTop(_) => self.minimum_release_hm3_per_day[month],
+            Demand::InAll(_) => 0.0,
+        };
+        let asked = |month: usize| self.demand_hm3_per_day.daily_hm3()[month] + on_top(month);
+        let is_too_much = |month: &usize| asked(*month) > self.release_capacity_hm3_per_day;
+        if let Some(month) = (0..12).find(is_too_much) {
+            unlikely.push(Unlikely::new(
+                "reservoir",
+                format!(
+                    "in {} {:.2} hm3 a day are asked of it and its outlets pass {:.2}: it is short on every such day; mind the units",
+                    MONTHS[month],
+                    asked(month),
+                    self.release_capacity_hm3_per_day
+                ),
+            ));
+        }
+        let highest_hm3 = self.flood_rule.iter().map(|point| point.not_above_hm3).reduce(f64::max);
+        let full_hm3 = self.full_share * self.capacity_hm3;
+        if let Some(highest_hm3) = highest_hm3.filter(|highest_hm3| *highest_hm3 < full_hm3) {
+            unlikely.push(Unlikely::new(
+                "reservoir.flood_space",
+                format!(
+                    "the rule never lets it hold more than {highest_hm3} hm3, and it counts as full from {full_hm3} hm3 on: it hardly ever fills; \
+                     state full_share if it is full below that"
+                ),
+            ));
+        }
+        unlikely
     }
 
     /// What does not change from day to day.

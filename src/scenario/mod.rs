@@ -226,7 +226,7 @@ pub fn read(document: &Document<'_>) -> Draft {
         .has("inflow")
         .then(|| inflow::read(top.section("inflow")))
         .map_or((None, None), |(observed, typed)| (observed, Some(typed)));
-    let reservoir = top.has("reservoir").then(|| reservoir::read(top.section("reservoir"), is_southern));
+    let reservoir = top.has("reservoir").then(|| reservoir::read(top.section("reservoir")));
     top.knows("inflow");
     top.knows("reservoir");
     if reservoir.is_some() && inflow.is_none() {

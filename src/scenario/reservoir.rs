@@ -41,13 +41,13 @@ const FULL_SHARE: f64 = 0.99;
 /// Refill dates that are tried, days, where nothing else is stated.
 const REFILL_MOVED_DAYS: [i32; 3] = [-30, -20, -10];
 
-pub(super) fn read(mut section: Section<'_>, is_southern: bool) -> Option<ReservoirTyped> {
-    let typed = read_keys(&mut section, is_southern);
+pub(super) fn read(mut section: Section<'_>) -> Option<ReservoirTyped> {
+    let typed = read_keys(&mut section);
     section.finish();
     typed
 }
 
-fn read_keys(section: &mut Section<'_>, is_southern: bool) -> Option<ReservoirTyped> {
+fn read_keys(section: &mut Section<'_>) -> Option<ReservoirTyped> {
     let name = read_name(section);
     let capacity = required_volume(section, CAPACITY, "what it holds when full");
     let dead = volume_or(section, DEAD, 0.0);
@@ -58,7 +58,7 @@ fn read_keys(section: &mut Section<'_>, is_southern: bool) -> Option<ReservoirTy
     let evaporation = flow_or_none(section, &EVAPORATION);
     let rule = read_rule(section.sections("flood_space"));
     let full_share = section.number_or("full_share", FULL_SHARE, 0.5..=1.0, "a share of the capacity");
-    let storage_dates = read_dates(section, is_southern);
+    let storage_dates = read_dates(section);
     // A rule with a fault is a rule.
     let is_no_list = section.has("flood_space") && !section.is_list("flood_space");
     let has_rule = is_no_list || rule.as_ref().is_none_or(|rule| !rule.is_empty());
@@ -104,6 +104,7 @@ fn read_keys(section: &mut Section<'_>, is_southern: bool) -> Option<ReservoirTy
         note_as_typed(section, faults, &all);
         return None;
     }
+    section.notes.unlikely.borrow_mut().extend(reservoir.unlikely());
     let changes = match changes {
         None => Vec::new(),
         Some(changes) => changes?,
@@ -217,15 +218,14 @@ fn read_point(mut section: Section<'_>) -> Option<(MonthDay, Stated<f64>)> {
     Some((on?, not_above?))
 }
 
-fn read_dates(section: &mut Section<'_>, is_southern: bool) -> Option<Vec<MonthDay>> {
+fn read_dates(section: &mut Section<'_>) -> Option<Vec<MonthDay>> {
     const KEY: &str = "storage_dates";
-    let usual = if is_southern { ["10-01", "01-01"] } else { ["04-01", "07-01"] };
     let Some(texts) = section.texts(KEY) else {
         if section.has(KEY) {
             return None;
         }
-        section.default(KEY, format!("{usual:?}"));
-        return Some(usual.into_iter().filter_map(MonthDay::parse).collect());
+        section.default(KEY, "[]");
+        return Some(Vec::new());
     };
     let days: Vec<Option<MonthDay>> =
         texts.iter().enumerate().map(|(at, text)| section.parse_day(&format!("{KEY}[{at}]"), text)).collect();

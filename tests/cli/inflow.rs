@@ -288,7 +288,7 @@ fn a_broken_file_is_refused_with_every_fault() {
         "inflow.csv:4",
         "a date that line 2 does not have already",
         "inflow.csv:5",
-        "a day's mean flow of a river",
+        "more than any river brings",
     ] {
         assert!(ended.stderr.contains(expected), "{expected:?} in {}", ended.stderr);
     }

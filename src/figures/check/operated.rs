@@ -198,6 +198,7 @@ impl Operated<'_> {
             &operated,
             None,
             &OperationsQuestions {
+                foretold_window: Some(0),
                 levels_c: self.levels_c,
                 reference: self.reference,
                 area_km2: 600.0,

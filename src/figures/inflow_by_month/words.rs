@@ -57,10 +57,11 @@ impl Words {
                  own temperatures, not day-to-day variation. Below: no: not up to {up_to}; ?: these realizations cannot tell.",
             ),
             caption: format!(
-                "Share of the year's {word} that comes in each month, the mean over the years of a realization, at each warming \
+                "Share of the year's {} that comes in each month, the mean over the years of a realization, at each warming \
                  level: median over {}.{which} The grey band is the 5–95 % range over realizations at the reference: chance of \
                  precipitation, not day-to-day variation. The title adds up by how much months gain or lose, and takes half of it. It \
                  is a what-if, no forecast of any year.{observed}",
+                inside(word),
                 ensemble(findings),
             ),
             kind_of_drawing: format!(
@@ -68,7 +69,8 @@ impl Words {
                 super::super::labels::counted(shown.all().len(), "level")
             ),
             description: format!(
-                "Share of the year's {word} by month. {}.",
+                "Share of the year's {} by month. {}.",
+                inside(word),
                 sentence(&described.collect::<Vec<_>>().join("; "))
             ),
         })

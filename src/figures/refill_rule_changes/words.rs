@@ -3,7 +3,7 @@
 use super::super::ensemble;
 use super::super::labels::{counted, grouped, level, sentence};
 use super::super::rule_change_words::{
-    LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words, changed,
+    ALL_BROUGHT_BACK, LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words, changed,
 };
 use super::super::shown::{Shown, name};
 use super::signed_size;
@@ -97,7 +97,7 @@ fn title(
         ));
     };
     let place = findings.levels_c.get(at).map_or_else(String::new, |c| level(units, *c));
-    let Some((change, found)) = brought_back(operations, at) else {
+    let Some((change, found)) = brought_back(operations, [findings.reference, at]) else {
         return Some(format!(
             "At {place}, warming takes next to nothing of the reservoir's reliability by volume ({} %, {} % at the reference): \
              there is nothing to bring back",
@@ -111,7 +111,7 @@ fn title(
     let brings = |what: &str| format!("{falls}; {rule} brings back {what}{}", range(found));
     Some(match found.value {
         ..LEAST_BROUGHT_BACK => format!("{falls}; none of the changes tried brings any of that back"),
-        0.995.. => brings("all of that"),
+        ALL_BROUGHT_BACK.. => brings("all of that"),
         value => brings(&format!("{} % of that", signed_size(100.0 * value))),
     })
 }

@@ -40,12 +40,12 @@ impl Words {
         let rules = rules.join("; ");
         let right = match across {
             Across::Spill => format!("Spill a year ({unit})"),
-            Across::Encroached => "Days a year above the flood-space rule".to_owned(),
+            Across::Encroached => "Days a year above the stated flood-space rule".to_owned(),
         };
         let why = match across {
             Across::Spill => "",
             Across::Encroached => {
-                " Hardly any of these rules spills, so that days above the flood-space rule stand for it."
+                " Hardly any of these rules spills, so that days above the stated flood-space rule, whichever rule is run, stand for what it costs."
             }
         };
         let described = operations.rule_changes.iter().map(|of| {
@@ -76,7 +76,7 @@ impl Words {
                  a what-if for planning, no guide to the operation of a dam.",
                 match across {
                     Across::Spill => "spill",
-                    Across::Encroached => "days above the flood-space rule",
+                    Across::Encroached => "days above the stated flood-space rule",
                 },
                 ensemble(findings),
             ),
@@ -140,7 +140,7 @@ fn title(
     let rule = change_in_words(change);
     let cost_name = match across {
         Across::Spill => "spill",
-        Across::Encroached => "days above the flood-space rule",
+        Across::Encroached => "days above the stated flood-space rule",
     };
     let unit = units.volume().word;
     let [before, after] = [short, other_short].map(|hm3| volume(units, hm3));

@@ -122,17 +122,20 @@ fn title(
         (None, Some(high)) => told(high, "higher"),
         (None, None) => return Some(format!("At {place}, median storage stays what it is at the reference")),
     };
-    let outweighs = |on: &&OnDay<'_>| {
-        let ratio = on.found.levels.get(at).and_then(|found| found.signal_to_spread);
-        ratio.is_some_and(|ratio| ratio.value > 1.0)
+    // Told only where both ends of the ratio's range say the same.
+    let ranges = days.iter().map(|on| on.found.levels.get(at)?.signal_to_spread_range);
+    let (mut outweighs, mut does_not) = (0, 0);
+    for range in ranges.flatten() {
+        outweighs += usize::from(range.q05 > 1.0);
+        does_not += usize::from(range.q95 < 1.0);
+    }
+    let all = days.len();
+    let against = match (outweighs, does_not) {
+        (0, 0) => String::new(),
+        (0, _) if does_not == all => format!("; precipitation outweighs that on all {all} dates"),
+        (0, _) => format!("; precipitation outweighs that on {does_not} of {all} dates"),
+        _ if outweighs == all => format!("; that outweighs precipitation on all {all} dates"),
+        _ => format!("; that outweighs precipitation on {outweighs} of {all} dates"),
     };
-    let count = days.iter().filter(outweighs).count();
-    let against = if count == 0 {
-        format!("precipitation outweighs that on all {} dates", days.len())
-    } else if count == days.len() {
-        format!("that outweighs precipitation on all {count} dates")
-    } else {
-        format!("that outweighs precipitation on {count} of {} dates", days.len())
-    };
-    Some(format!("At {place}, median storage is {what}; {against}"))
+    Some(format!("At {place}, median storage is {what}{against}"))
 }

@@ -1,6 +1,7 @@
 //! What other rules would change, and how much of what warming takes they would bring back.
 
 use super::super::distribution::Distribution;
+use super::super::quantile::{quantile, sorted};
 use super::super::ranged::Ranged;
 use super::super::resample::{Ranked, Resamples};
 use super::super::shift::Shift;
@@ -42,9 +43,14 @@ pub struct ChangedLevel {
     pub brought_back: Option<Ranged>,
 }
 
-/// A warming that changes a measure by less changes next to nothing: a tenth of a percent, a tenth of a million m3, a tenth of a day.
-fn least_change(kind: Kind) -> f64 {
-    if kind == Kind::Share { 0.001 } else { 0.1 }
+/// A warming that changes a measure by less changes next to nothing: a tenth of a percent, a tenth of a day, and of a volume a
+/// hundredth of what it is at the reference, but at least 1000 m3.
+fn least_change(kind: Kind, at_reference: f64) -> f64 {
+    match kind {
+        Kind::Share => 0.001,
+        Kind::VolumeHm3 => (0.01 * at_reference.abs()).max(0.001),
+        _ => 0.1,
+    }
 }
 
 pub(super) fn rule_changes(
@@ -63,9 +69,11 @@ pub(super) fn rule_changes(
         let shift = || Shift::of(&as_stated, &values, resamples).map(|(shift, _)| shift);
         let is_changed = operated.tried[change] != Change::AsStated;
         let brought_back = (is_changed && level != levels.reference).then(|| {
-            let taken = differences(&as_stated, &of(levels.reference, 0, at));
+            let at_reference = of(levels.reference, 0, at);
+            let median = quantile(&sorted(at_reference.iter().copied()), 0.5);
+            let taken = differences(&as_stated, &at_reference);
             let given = differences(&as_stated, &values);
-            share(&given, &taken, *better, least_change(measure.kind), resamples)
+            share(&given, &taken, *better, least_change(measure.kind, median), resamples)
         });
         ChangedLevel {
             level_c: levels.levels_c[level],

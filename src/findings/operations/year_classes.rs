@@ -59,9 +59,10 @@ impl YearClasses {
             let ranked = Ranked::new(years.indexed_iter().map(|((realization, _), hm3)| (*hm3, realization)));
             let kept = |limit: usize| {
                 let of = |weights: &[u32]| {
-                    let below: f64 = of_reference.shares(weights)[..=limit].iter().sum();
-                    let is_inside = below > 0.0 && below < 1.0;
-                    is_inside.then(|| ranked.quantiles(weights, [below]).map(|[hm3]| hm3)).flatten()
+                    let years = of_reference.weighted(weights);
+                    let [below, all] = [&years[..=limit], &years].map(|of| of.iter().sum::<f64>());
+                    let is_inside = below > 0.0 && below < all;
+                    is_inside.then(|| ranked.quantiles(weights, [below / all]).map(|[hm3]| hm3)).flatten()
                 };
                 Some(Ranged::new(of(&once)?, resamples.each(of)))
             };
@@ -95,13 +96,19 @@ impl Counts {
         Self(years.rows().into_iter().map(of_realization).collect())
     }
 
-    /// Share of years in each class, in a resample.
-    fn shares(&self, weights: &[u32]) -> Vec<f64> {
+    /// Years in each class, in a resample: whole numbers, so that their sums are exact.
+    fn weighted(&self, weights: &[u32]) -> Vec<f64> {
         let classes = self.0.first().map_or(0, Vec::len);
         let mut sums = vec![0.0; classes];
         for (counts, weight) in self.0.iter().zip(weights) {
             sums.iter_mut().zip(counts).for_each(|(sum, count)| *sum += f64::from(*weight) * count);
         }
+        sums
+    }
+
+    /// Share of years in each class, in a resample.
+    fn shares(&self, weights: &[u32]) -> Vec<f64> {
+        let sums = self.weighted(weights);
         let all: f64 = sums.iter().sum();
         sums.iter().map(|sum| sum / all).collect()
     }
@@ -130,6 +137,15 @@ mod tests {
         assert_eq!(shares(1), [0.41, 0.59, 0.0]);
         assert!(found.levels[1].bounds[2].is_some() && found.levels[1].bounds[0].is_none());
         let kept = |at: usize| found.levels[1].kept_limits_hm3[at].unwrap().value;
+        // Limits above all years keep nothing: 0.21 + 0.6 + ... need not add up to 1 exactly.
+        let above = YearClasses::of(
+            &measure,
+            &volumes.view(),
+            &[21.0, 33.0, 81.0, 900.0],
+            levels,
+            &Resamples::new(1, 10),
+        );
+        assert_eq!(above.unwrap().levels[1].kept_limits_hm3[3], None);
         assert!((kept(0) - 10.2).abs() < 1e-9 && (kept(1) - 40.3).abs() < 1e-9, "{} {}", kept(0), kept(1));
     }
 }

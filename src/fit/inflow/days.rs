@@ -68,8 +68,8 @@ impl InflowRecord {
         self.years.iter().map(|year| year.observed_hm3.iter().any(Option::is_some)).collect()
     }
 
-    /// Inflow by a routing, `[year][day]`, hm3 a day. The first year, and each that does not follow on the one before, is routed
-    /// once before, so that water is on its way.
+    /// Inflow by a routing, `[year][day]`, hm3 a day. The first year, and each that does not follow on the one before, begins
+    /// with the water on its way that years like it leave.
     pub fn routed(&self, routing: &Routing) -> Vec<Vec<f64>> {
         let mut router = Router::new(routing, self.area_km2, 1);
         let mut all = Vec::with_capacity(self.years.len());

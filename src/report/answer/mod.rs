@@ -18,6 +18,7 @@ mod years;
 
 pub(in super::super) use chance::chance as chance_in_words;
 pub use chance::{chance_in_table, towards_shift};
+pub(super) use reservoir::why_unknown;
 pub(super) use slopes::{per_degree, percent};
 pub use years::{in_years, range, years_of};
 

@@ -3,9 +3,22 @@
 use super::super::numbers::fixed;
 use super::super::reader::Reader;
 use super::telling_level;
-use crate::figures::{LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words};
-use crate::findings::{Findings, Judged, judged};
+use crate::figures::{ALL_BROUGHT_BACK, LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words};
+use crate::findings::{Findings, Judged, MeasureFindings, judged};
 use crate::season::Outcome;
+
+/// Why it is not known whether a measure's shift outweighs its spread.
+pub(in super::super) fn why_unknown(of: &MeasureFindings, realizations: usize) -> &'static str {
+    if realizations < 2 {
+        "one realization tells no spread to hold that against"
+    } else if of.precipitation_spread.is_some_and(|spread| spread.q05 < spread.q95) {
+        "whether that is more than precipitation's spread cannot be told at every level"
+    } else if of.precipitation_spread.is_some() {
+        "its spread over realizations is too small to hold anything against"
+    } else {
+        "in too many realizations it has no value for a spread to hold that against"
+    }
+}
 
 /// How reliability by volume changes, whether that outweighs precipitation, and what a change of the rules would bring back; nothing
 /// without a reservoir, or where nothing is demanded of it.
@@ -35,14 +48,19 @@ pub(super) fn reservoir(findings: &Findings, cause: &str, reader: Reader) -> Vec
             Judged::CannotTell { .. } => {
                 format!("whether the {cause} outweighs precipitation in that these realizations cannot tell")
             }
-            Judged::Unknown => "it does not spread".to_owned(),
+            Judged::Unknown => why_unknown(measure, findings.realizations).to_owned(),
         };
         let supplied = format!(
             "Under the stated rules the reservoir's reliability by volume, the share of demand that is supplied, {how}; {against}."
         );
-        let back = brought_back(operations, at).filter(|(_, back)| back.value >= LEAST_BROUGHT_BACK).map(|(change, back)| {
+        let back = brought_back(operations, [findings.reference, at]).filter(|(_, back)| back.value >= LEAST_BROUGHT_BACK).map(|(change, back)| {
             let rule = change_in_words(change);
-            format!("{} would bring back {} % of that.", crate::figures::sentence(&rule), fixed(100.0 * back.value, 0))
+            let rule = crate::figures::sentence(&rule);
+            if back.value >= ALL_BROUGHT_BACK {
+                format!("{rule} would bring back all of that.")
+            } else {
+                format!("{rule} would bring back {} % of that.", fixed(100.0 * back.value, 0))
+            }
         });
         let back = back.filter(|_| said_before != said_after);
         Some([Some(supplied), back].into_iter().flatten().collect())

@@ -6,6 +6,7 @@ mod reservoir;
 mod rule_changes;
 mod year_classes;
 
+use super::super::answer::why_unknown;
 use super::super::cautions::PLANNING_AID;
 use super::super::numbers::{DASH, counted, fixed};
 use super::super::reader::Reader;
@@ -106,19 +107,21 @@ fn sentence(findings: &Findings, of: &MeasureFindings, at: usize, reader: Reader
     let (reference, warmed) = (reference?, warmed?);
     let kind = of.measure.kind;
     let shift = warmed.shift?.median.value;
+    let changes = findings.by_year.as_ref().is_some_and(|found| found.levels_change_precipitation);
+    let cause = crate::figures::cause(changes);
     let unit =
         if kind == Kind::VolumeHm3 { format!(" {}", reader.units.volume().word) } else { String::new() };
     let against = match judged(of.outweighs, of.outweighs_range) {
         Judged::Outweighs { level_c, .. } => {
-            format!("warming outweighs precipitation in it from about {} on", reader.between_levels(level_c))
+            format!("{cause} outweighs precipitation in it from about {} on", reader.between_levels(level_c))
         }
         Judged::DoesNot { up_to_c } => {
-            format!("up to {}, precipitation outweighs warming in it", reader.level(up_to_c))
+            format!("up to {}, precipitation outweighs {cause} in it", reader.level(up_to_c))
         }
         Judged::CannotTell { .. } => {
-            "whether warming outweighs precipitation in it these realizations cannot tell".to_owned()
+            format!("whether {cause} outweighs precipitation in it these realizations cannot tell")
         }
-        Judged::Unknown => "it does not spread, so that nothing is to be outweighed".to_owned(),
+        Judged::Unknown => why_unknown(of, findings.realizations).to_owned(),
     };
     Some(format!(
         "{}: {} at the reference, {} at {} (median change {}{unit}); {against}.",

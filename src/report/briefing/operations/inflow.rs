@@ -12,7 +12,10 @@ pub(super) fn section(study: &Study<'_>, found: &Operations, figures: &Figures<'
     let (findings, reader) = (study.findings, study.reader);
     let window = found.inflow.iter().find(|of| of.measure.is_volume);
     let told: Vec<&MeasureFindings> =
-        window.into_iter().chain(super::named(found, &["inflow_centroid_day", "inflow_year_hm3"])).collect();
+        window.into_iter().chain(super::named(found, &["inflow_centroid_day"])).collect();
+    let year = super::named(found, &["inflow_year_hm3"]).into_iter();
+    let is_told = |of: &&MeasureFindings| window.is_none_or(|window| window.measure.name != of.measure.name);
+    let told: Vec<&MeasureFindings> = told.into_iter().chain(year.filter(is_told)).collect();
     let word = crate::figures::sentence(&found.word);
     html! {
         (super::caution())

@@ -6,7 +6,9 @@ use super::super::super::reader::Reader;
 use super::super::super::study::Study;
 use super::super::{Figures, levels};
 use super::value;
-use crate::figures::{LEAST_BROUGHT_BACK, Part, RELIABILITY, brought_back, change_in_words};
+use crate::figures::{
+    ALL_BROUGHT_BACK, LEAST_BROUGHT_BACK, Part, RELIABILITY, brought_back, change_in_words,
+};
 use crate::findings::{Operations, RuleChange};
 use crate::season::Kind;
 use maud::{Markup, html};
@@ -29,7 +31,11 @@ pub(super) fn section(study: &Study<'_>, found: &Operations, figures: &Figures<'
 
 /// What comes back at a level, and what the same change would do at the reference.
 fn told(found: &Operations, [reference, at]: [usize; 2], place: &str, reader: Reader) -> String {
-    let Some((change, back)) = brought_back(found, at) else {
+    let supplied = found.measure(RELIABILITY).and_then(|of| of.levels.get(reference)?.periods.q50.value());
+    if supplied.is_none() {
+        return "Nothing is demanded of the reservoir, so that nothing can fall short, and nothing come back.".to_owned();
+    }
+    let Some((change, back)) = brought_back(found, [reference, at]) else {
         return format!(
             "At {place}, warming takes next to nothing of the reliability by volume, so that there is nothing to bring back."
         );
@@ -40,6 +46,7 @@ fn told(found: &Operations, [reference, at]: [usize; 2], place: &str, reader: Re
         );
     }
     let percent = |share: f64| format!("{} %", fixed(100.0 * share, 0));
+    let told = if back.value >= ALL_BROUGHT_BACK { "all".to_owned() } else { percent(back.value) };
     let range = match (back.q05, back.q95) {
         (Some(low), Some(high)) => {
             format!(" (5–95 % over resampled realizations: {} to {})", percent(low), percent(high))
@@ -56,7 +63,7 @@ fn told(found: &Operations, [reference, at]: [usize; 2], place: &str, reader: Re
     format!(
         "At {place}, {} brings back {}{range} of the reliability by volume that warming takes{at_reference}.",
         change_in_words(change),
-        percent(back.value)
+        told
     )
 }
 
@@ -74,7 +81,11 @@ fn table(study: &Study<'_>, found: &Operations, measure: usize, reader: Reader) 
         html! {
             (value(reader, kind, at.periods.q50))
             @if let Some(shift) = at.shift { br; (reader.change_of(kind, shift.median.value, None)) }
-            @if let Some(back) = at.brought_back { br; (fixed(100.0 * back.value, 0)) " % back" }
+            @match at.brought_back {
+                Some(back) if back.value >= ALL_BROUGHT_BACK => { br; "all back" }
+                Some(back) if back.value >= LEAST_BROUGHT_BACK => { br; (fixed(100.0 * back.value, 0)) " % back" }
+                _ => {}
+            }
         }
     };
     html! {
@@ -82,7 +93,7 @@ fn table(study: &Study<'_>, found: &Operations, measure: usize, reader: Reader) 
             caption {
                 (crate::figures::sentence(title)) ": median over realizations under each set of rules; below it the median paired change from the \
                  rules as stated at the same level, and how much that is of what warming takes from the reference to this level, where it takes \
-                 something."
+                 something and the change brings some of it back. Where demand is scaled, shortage and reliability are of that demand."
             }
             thead { tr {
                 th scope="col" { "Rules" }
