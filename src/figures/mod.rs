@@ -59,7 +59,7 @@ pub use fits::{DrawnFit, FIT_FIGURES, FIT_SITE_FIGURES, FitFigure, FitPart, FitS
 pub use labels::{cause, sentence};
 pub use one_slide::PLANNING_AID;
 pub use rule_change_words::{
-    ALL_BROUGHT_BACK, LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words,
+    ALL_BROUGHT_BACK, LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words, cost_in_days_above,
 };
 pub use rule_panel::rule_in_words;
 pub use text_width::text_width;

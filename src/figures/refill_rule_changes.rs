@@ -6,7 +6,7 @@ use super::labels::percent_size;
 use super::level_lines::{marked, row};
 use super::marks::point_interval;
 use super::page::Paragraphs;
-use super::rule_change_words::{RELIABILITY, change_in_words, changed, measure};
+use super::rule_change_words::{ALL_BROUGHT_BACK, RELIABILITY, change_in_words, changed, measure};
 use super::sheet::{Drawn, HPos, Plot, Px, Sheet, Stroke, VPos};
 use super::shown::Shown;
 use super::theme::{EDGE, LABEL, MARGIN_PX, NAME, NOTE, WIDTH_PX};
@@ -156,10 +156,11 @@ fn paint(
             for (rule, of) in operations.rule_changes.iter().enumerate().skip(1) {
                 let found = changed(of, RELIABILITY, *told).and_then(|found| found.brought_back);
                 let y = row_top(rule) + row_px / 2.0;
-                let said = found.map_or_else(
-                    || "–".to_owned(),
-                    |found| format!("{} %", signed_size(100.0 * found.value)),
-                );
+                let said = match found.map(|found| found.value) {
+                    Some(ALL_BROUGHT_BACK..) => "all".to_owned(),
+                    Some(share) => format!("{} %", signed_size(100.0 * share)),
+                    None => "–".to_owned(),
+                };
                 sheet.write(&said, (x, y), NAME, HPos::Right, VPos::Center)?;
             }
             Ok(())

@@ -33,6 +33,22 @@ pub fn change_in_words(change: Change) -> String {
     }
 }
 
+/// What a change costs in room for floods, in words: ` Storage would then stand above the stated flood-space rule on 67 days a year,
+/// 0.5 under the stated rules.` Nothing where it costs less than a tenth of a day.
+pub fn cost_in_days_above(operations: &Operations, change: Change, at: usize) -> Option<String> {
+    let days = |of: &RuleChange| changed(of, "flood_space_encroached_days", at)?.periods.q50.value();
+    let before = days(operations.rule_changes.first()?)?;
+    let after = days(operations.rule_changes.iter().find(|of| of.change == change)?)?;
+    let told = |days: f64| grouped(days, usize::from(days < 9.95));
+    (after - before >= 0.1).then(|| {
+        format!(
+            " Storage would then stand above the stated flood-space rule on {} days a year, {} under the stated rules.",
+            told(after),
+            told(before)
+        )
+    })
+}
+
 /// The measure of that name under a change.
 pub(super) fn measure<'a>(of: &'a RuleChange, name: &str) -> Option<&'a ChangedMeasure> {
     of.measures.iter().find(|found| found.measure.name == name)

@@ -248,7 +248,7 @@ mod tests {
                 shortage_hm3: missing,
             };
             books.enter(&day, &out);
-            year.enter(1.0, &day, &out, 100.0);
+            year.enter(1.0, &day, &out, (100.0, 100.0));
         }
         books.enter_year(&year);
         let of: Vec<(String, f64)> =

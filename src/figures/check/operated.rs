@@ -6,7 +6,7 @@ use super::{Setting, assert_texts_apart, texts};
 use crate::calendar::{COMMON_DATES, MONTHS, MonthDay, WaterYearStart};
 use crate::ensemble::OperatedSeasons;
 use crate::findings::{Findings, Operations, OperationsQuestions, PoolShown};
-use crate::operation::{Change, Operation};
+use crate::operation::{CHANGED, Change, Operation};
 use crate::season::{Kind, Measure};
 use crate::units::UnitSystem;
 use ndarray::{Array3, Array4};
@@ -141,7 +141,7 @@ impl Operated<'_> {
         }
     }
 
-    /// Of a set of rules: reliability by time and volume, shortage, spill, days above the flood-space rule, years not filled.
+    /// Of a set of rules: reliability by time and volume, shortage, spill, water unused, days above the stated flood-space rule, years not filled.
     fn under(&self, level: usize, change: Change, measure: usize, realization: usize) -> f64 {
         let warming = self.levels_c[level] - self.levels_c[self.reference];
         let place = (realization as f64 + 0.5) / self.realizations as f64 * 2.0 - 1.0;
@@ -159,7 +159,8 @@ impl Operated<'_> {
             0 | 1 => 0.986 + 0.004 * place - self.taken * warming * (1.0 - back),
             2 => 5.0 + 0.5 * place + 1000.0 / 3.0 * self.taken * warming * (1.0 - back),
             3 => (spill_hm3 + more_hm3 * earlier) * (1.0 + 0.2 * place),
-            4 => 0.6 - 0.3 * earlier + 0.1 * place,
+            4 => 60.0 + place,
+            5 => 0.6 + 20.0 * earlier + 0.1 * place,
             _ => 0.5,
         }
     }
@@ -180,7 +181,7 @@ impl Operated<'_> {
             wholes: Array3::zeros((levels, 0, count)),
             tried: self.tried.to_vec(),
             of_changes: Operation::of_changes(),
-            changed: Array4::from_shape_fn((levels, self.tried.len(), 6, count), |(l, c, m, r)| {
+            changed: Array4::from_shape_fn((levels, self.tried.len(), CHANGED, count), |(l, c, m, r)| {
                 self.under(l, self.tried[c], m, r)
             }),
         };
@@ -285,14 +286,14 @@ fn months_whose_shift_outweighs_say_from_where_on() {
 }
 
 /// By hand: 11 hm3 less on 1 September and 8 more on 1 April a degree are 22 and 16 at +2 degC; the spread's 5–95 % lies 9 hm3 to
-/// either side (type 8 of an even spread of 10), with 30 it lies 27 away. A hm3 is 0.810713 thousand acre-feet: 17.8 and 13.0.
+/// either side (type 8 of an even spread of 10), with 45 it lies 40.5 away. A hm3 is 0.810713 thousand acre-feet: 17.8 and 13.0.
 #[test]
 fn titles_say_when_storage_is_lower_and_higher() {
     let slug = "storage-through-year";
     let start = "At +2 °C, median storage is up to 22.0 hm³ lower (on 1 September) and up to 16.0 hm³ higher (on 1 April)";
     assert_eq!(title(slug, &PLAIN), format!("{start}; that outweighs precipitation on 2 of 13 dates"));
     assert_eq!(
-        title(slug, &Operated { storage_hm3: [8.0, -11.0, 30.0], ..PLAIN }),
+        title(slug, &Operated { storage_hm3: [8.0, -11.0, 45.0], ..PLAIN }),
         format!("{start}; precipitation outweighs that on all 13 dates")
     );
     assert_eq!(
@@ -323,8 +324,8 @@ fn a_reservoir_without_a_rule_has_no_line_of_it() {
     assert_eq!([true, false].map(|keeps_space| named(&Operated { keeps_space, ..PLAIN })), [1, 0]);
 }
 
-/// By hand: 0.3 points a degree leave 98.0 of 98.6 % at +2 degC, of which 57 % come back. A change of demand would bring back more than
-/// all, but it is dates that are asked first, unless none of them brings back anything.
+/// By hand: 0.3 points a degree leave 98.0 of 98.6 % at +2 degC, of which 57 % come back. Where no date brings back
+/// anything, of what is left half the flood space brings back a fifth; a change of demand, which brings no water, is not asked.
 #[test]
 fn titles_say_what_a_date_brings_back() {
     let slug = "refill-rule-changes";
@@ -340,7 +341,7 @@ fn titles_say_what_a_date_brings_back() {
         format!("{falls}; refill 30 days earlier brings back all of that (5–95 %: 120 to 120 %)")
     );
     let other = title(slug, &Operated { brought_back: -0.4, ..PLAIN });
-    assert_eq!(other, format!("{falls}; demand × 0.9 brings back all of that (5–95 %: 110 to 110 %)"));
+    assert_eq!(other, format!("{falls}; flood space × 0.5 brings back 20 % of that (5–95 %: 20 to 20 %)"));
     assert_eq!(
         title(slug, &Operated { brought_back: -0.4, tried: &TRIED[..3], ..PLAIN }),
         format!("{falls}; none of the changes tried brings any of that back")
@@ -357,7 +358,7 @@ fn titles_say_what_a_date_brings_back() {
 }
 
 /// By hand: shortage grows by 1 hm3 a degree from 5, of which 57 % come back: 7.00 and 5.86 at +2 degC. Where nothing spills, days
-/// above the rule stand for it, 0.6 less 0.3.
+/// above the stated rule stand for it, 0.6 and 20 more.
 #[test]
 fn titles_say_what_less_shortage_costs() {
     let slug = "shortage-against-spill";
@@ -368,7 +369,10 @@ fn titles_say_what_less_shortage_costs() {
         format!("{takes}; spill stays at 0.50 hm³ a year")
     );
     let dry = draw_in(UnitSystem::Metric, slug, &Operated { spill_hm3: [0.0, 0.0], ..PLAIN });
-    assert_eq!(dry.title, format!("{takes} and days above the flood-space rule from 0.6 to 0.3 a year"));
+    assert_eq!(
+        dry.title,
+        format!("{takes} and days above the stated flood-space rule from 0.6 to 20.6 a year")
+    );
     assert!(dry.caption.contains("Hardly any of these rules spills"), "{}", dry.caption);
     assert_eq!(
         title(slug, &Operated { brought_back: -0.4, ..PLAIN }),

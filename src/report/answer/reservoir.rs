@@ -3,7 +3,9 @@
 use super::super::numbers::fixed;
 use super::super::reader::Reader;
 use super::telling_level;
-use crate::figures::{ALL_BROUGHT_BACK, LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words};
+use crate::figures::{
+    ALL_BROUGHT_BACK, LEAST_BROUGHT_BACK, RELIABILITY, brought_back, change_in_words, cost_in_days_above,
+};
 use crate::findings::{Findings, Judged, MeasureFindings, judged};
 use crate::season::Outcome;
 
@@ -56,11 +58,13 @@ pub(super) fn reservoir(findings: &Findings, cause: &str, reader: Reader) -> Vec
         let back = brought_back(operations, [findings.reference, at]).filter(|(_, back)| back.value >= LEAST_BROUGHT_BACK).map(|(change, back)| {
             let rule = change_in_words(change);
             let rule = crate::figures::sentence(&rule);
-            if back.value >= ALL_BROUGHT_BACK {
-                format!("{rule} would bring back all of that.")
+            let how_much = if back.value >= ALL_BROUGHT_BACK {
+                "all".to_owned()
             } else {
-                format!("{rule} would bring back {} % of that.", fixed(100.0 * back.value, 0))
-            }
+                format!("{} %", fixed(100.0 * back.value, 0))
+            };
+            let cost = cost_in_days_above(operations, change, at).unwrap_or_default();
+            format!("{rule} would bring back {how_much} of that.{cost}")
         });
         let back = back.filter(|_| said_before != said_after);
         Some([Some(supplied), back].into_iter().flatten().collect())

@@ -8,6 +8,7 @@ use super::super::{Figures, levels};
 use super::value;
 use crate::figures::{
     ALL_BROUGHT_BACK, LEAST_BROUGHT_BACK, Part, RELIABILITY, brought_back, change_in_words,
+    cost_in_days_above,
 };
 use crate::findings::{Operations, RuleChange};
 use crate::season::Kind;
@@ -61,9 +62,10 @@ fn told(found: &Operations, [reference, at]: [usize; 2], place: &str, reader: Re
         format!("; at the reference the same change of rules makes {change}")
     });
     format!(
-        "At {place}, {} brings back {}{range} of the reliability by volume that warming takes{at_reference}.",
+        "At {place}, {} brings back {}{range} of the reliability by volume that warming takes{at_reference}.{}",
         change_in_words(change),
-        told
+        told,
+        cost_in_days_above(found, change, at).unwrap_or_default()
     )
 }
 
