@@ -80,6 +80,19 @@ fn holds(scenario: &str, per_degree: f64, per_mm: f64, half_digit: f64) {
             "{shown}"
         );
     }
+    // Of the reservoir, at a node: a share to half of a tenth of a percent, its change in points.
+    let names = surface["measures"].as_array().unwrap();
+    let at = names.iter().position(|measure| measure["name"] == "reliability_volume_share").unwrap();
+    let is_it = |node: &&Value| {
+        (node["warming_c"].as_f64(), node["precipitation_change_pct"].as_f64()) == (Some(2.0), Some(-10.0))
+    };
+    let node = surface["nodes"].as_array().unwrap().iter().find(is_it).unwrap();
+    let share = node["measures"][at]["median"].as_f64().unwrap();
+    let shown = found["moved"][0]["basin"].as_array().unwrap();
+    let row = shown.iter().find(|row| row[0] == "Reliability by volume").unwrap();
+    assert!((number(&row[1]) - 100.0 * share).abs() <= 0.05 + 1e-9, "{row} for {share}");
+    assert!(row[2].as_str().unwrap().ends_with("points"), "{row}");
+
     let outside = found["outside"]["said"].as_str().unwrap();
     assert!(outside.starts_with("Nothing was run at +40 °"), "{outside}");
     assert!(found["outside"]["basin"].as_array().unwrap().iter().all(|row| row[1] == "–"), "{found}");

@@ -45,7 +45,7 @@
     if (row.kind === "date") return moved(change);
     const percent = row.least_for_percent !== null && reference >= row.least_for_percent;
     const share = percent ? ` (${signed((100 * change) / reference, 0)}\u00a0%)` : "";
-    return `${signed(change, decimals(row, change))} ${row.unit}${share}`;
+    return `${signed(change, decimals(row, change))} ${row.unit_of_change}${share}`;
   };
 
   // The nodes around a place, each with its weight; none beyond the ends.
@@ -107,14 +107,14 @@
       const known = value !== null && before !== null;
       cells[0].textContent = value === null ? none : written(row, value);
       cells[1].textContent = known ? changed(row, value - before, before) : none;
-      cells[2].textContent = known && error !== null ? `${fixed(error, Math.max(1, decimals(row, error)))} ${row.unit}` : none;
+      cells[2].textContent = known && error !== null ? `${fixed(error, Math.max(1, decimals(row, error)))} ${row.unit_of_change}` : none;
     }
     for (const { row, cells, bar, share } of bands) {
       const [value, before] = [found && read(row.nodes, found), read(row.nodes, reference)];
       const known = value !== null && before !== null;
       cells[0].textContent = before === null ? none : written(row, before);
       cells[1].textContent = value === null ? none : written(row, value);
-      cells[2].textContent = known ? `${signed(value - before, decimals(row, value - before))} ${row.unit}` : none;
+      cells[2].textContent = known ? `${signed(value - before, decimals(row, value - before))} ${row.unit_of_change}` : none;
       const left = known && before >= row.least_for_percent ? (100 * value) / before : null;
       bar.style.width = `${left === null ? 0 : Math.min(left, 150) / 20}em`;
       share.textContent = left === null ? none : `${fixed(left, 0)}\u00a0%`;

@@ -80,6 +80,8 @@ struct Row {
     title: String,
     kind: &'static str,
     unit: &'static str,
+    /// A share's change is told in points.
+    unit_of_change: &'static str,
     decimals: Decimals,
     /// A change of less than so much of the reference has no percentage; none of what is not an amount.
     least_for_percent: Option<f64>,
@@ -207,6 +209,7 @@ fn measure_row(
         title: crate::figures::sentence(&measure.title),
         kind,
         unit,
+        unit_of_change: if measure.kind == Kind::Share { "points" } else { unit },
         decimals,
         least_for_percent: measure.kind.least_reference().map(|least| factor * least),
         nodes: nodes().map(of).collect(),
@@ -229,6 +232,7 @@ fn bands(study: &Study<'_>, surface: &ResponseSurface) -> Vec<Row> {
         ),
         kind: "amount",
         unit: depth.word,
+        unit_of_change: depth.word,
         decimals: reader.depth_decimals(),
         least_for_percent: Some(depth.of(LEAST_REFERENCE_MM)),
         nodes: surface.nodes.iter().map(|node| node.band_swe_mm.get(at).map(|mm| depth.of(*mm))).collect(),
