@@ -29,6 +29,8 @@ demand_times = [0.8]
 
 fn study(units: &str) -> (Basin, Value) {
     let basin = Basin::new();
+    // Here it is the colder level that loses, so that a change of the rules can bring something back.
+    basin.exchange("levels_c = [0, 2]", "levels_c = [0, 2]\nreference_c = 2");
     basin.append(&format!("{OPERATED}\n[report]\nunits = \"{units}\"\n"));
     let ended = basin.run("study scenario.toml --into out --quiet");
     assert_eq!(ended.status, 0, "{}", ended.stderr);
@@ -95,6 +97,13 @@ fn rule_changes(basin: &Basin, found: &Value, told: &Told) {
         }
     }
     assert!(rows.next().is_none());
+    assert!(
+        list(found)
+            .iter()
+            .flat_map(|change| list(&change["measures"]))
+            .any(|measure| measure["levels"][0]["brought_back"]["q95"].is_number()),
+        "nothing is brought back: {found}"
+    );
 }
 
 fn year_classes(basin: &Basin, found: &Value, told: &Told) {
