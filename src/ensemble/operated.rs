@@ -45,6 +45,7 @@ impl OperatedSeasons {
             tried,
             of_changes: Operation::of_changes(),
         };
+        let kinds = operation.yearly_kinds();
         for (realization, kept) in kept.iter().enumerate() {
             for level in 0..levels {
                 for (year, values) in kept.years((level, levels), measures).enumerate() {
@@ -52,7 +53,7 @@ impl OperatedSeasons {
                         seasons.years[[level, measure, realization, year]] = *value;
                     }
                 }
-                let values = operation.period_values(kept, (level, levels));
+                let values = kept.period_values((level, levels), &kinds);
                 for (measure, value) in values.into_iter().enumerate() {
                     match measure.checked_sub(measures) {
                         None => seasons.periods[[level, measure, realization]] = value,

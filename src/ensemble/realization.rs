@@ -6,7 +6,7 @@ use super::plan::Plan;
 use super::swe_days::Tally;
 use super::watch::{Halt, Watch};
 use crate::calendar::day_of_water_year;
-use crate::operation::Operated;
+use crate::operation::{Operated, Operation};
 use crate::perturb::Generator;
 use crate::season::{Kind, NONE, NOT_GONE, period_value};
 
@@ -152,6 +152,7 @@ impl<'p> Workshop<'p> {
             })
         })?;
         let operated = self.operate()?;
+        let kinds = plan.operation.map(Operation::yearly_kinds);
         let bench = &self.benches[self.of_reference];
         let of_bands = nodes * bands;
         let mut one = Vec::with_capacity(plan.years);
@@ -171,8 +172,8 @@ impl<'p> Workshop<'p> {
                 let place = |year: &[f64]| year[(year.len() - of_bands) / measures.len() * at + node];
                 kept.basin.push(period(measure.kind, &place));
             }
-            if let Some(operation) = plan.operation {
-                kept.basin.extend(operation.period_values(&operated, (node, nodes)));
+            if let Some(kinds) = &kinds {
+                kept.basin.extend(operated.period_values((node, nodes), kinds));
             }
         }
         for band in 0..of_bands {

@@ -4,6 +4,7 @@
 //! satisfactory days, resilience the chance that a day of shortage is followed by a day without, vulnerability how deep a shortage
 //! goes, here the mean over shortages, each an unbroken run of days, of the largest share of a day's demand that is missing.
 
+use super::entry::Entry;
 use super::year_books::{LEAST_HM3, YearBooks};
 use crate::reservoir::{Day, Outcome};
 use crate::season::{Kind, Measure, NONE};
@@ -33,72 +34,42 @@ pub(super) struct AllBooks {
     unfilled_years: f64,
 }
 
-/// A measure of the books.
-struct Entry {
-    kind: Kind,
-    name: &'static str,
-    title: &'static str,
-    of: fn(&AllBooks) -> f64,
-}
+const RELIABILITY_OF_TIME: Entry<AllBooks> =
+    Entry::new(Kind::Share, "reliability_time_share", "reliability by time", |books| {
+        1.0 - books.short_days / books.days
+    });
 
-const RELIABILITY_OF_TIME: Entry = Entry {
-    kind: Kind::Share,
-    name: "reliability_time_share",
-    title: "reliability by time",
-    of: |books| 1.0 - books.short_days / books.days,
-};
-
-const RELIABILITY_OF_VOLUME: Entry = Entry {
-    kind: Kind::Share,
-    name: "reliability_volume_share",
-    title: "reliability by volume",
-    of: |books| {
+const RELIABILITY_OF_VOLUME: Entry<AllBooks> =
+    Entry::new(Kind::Share, "reliability_volume_share", "reliability by volume", |books| {
         if books.demanded_hm3 > 0.0 { 1.0 - books.shortage_hm3 / books.demanded_hm3 } else { NONE }
-    },
-};
+    });
 
-const NOT_FILLED: Entry = Entry {
-    kind: Kind::Share,
-    name: "years_not_filled_share",
-    title: "share of years in which it does not fill",
-    of: |books| books.unfilled_years / books.years,
-};
+const NOT_FILLED: Entry<AllBooks> =
+    Entry::new(Kind::Share, "years_not_filled_share", "share of years in which it does not fill", |books| {
+        books.unfilled_years / books.years
+    });
 
-const ENTRIES: [Entry; 8] = [
+const ENTRIES: [Entry<AllBooks>; 8] = [
     RELIABILITY_OF_TIME,
     RELIABILITY_OF_VOLUME,
-    Entry {
-        kind: Kind::Share,
-        name: "years_without_shortage_share",
-        title: "share of years without shortage",
-        of: |books| 1.0 - books.short_years / books.years,
-    },
-    Entry {
-        kind: Kind::Share,
-        name: "resilience_share",
-        title: "resilience",
-        of: |books| if books.followed > 0.0 { books.recovered / books.followed } else { NONE },
-    },
-    Entry {
-        kind: Kind::Share,
-        name: "vulnerability_share",
-        title: "vulnerability",
-        of: |books| {
-            if books.events > 0.0 { (books.deepest + books.event_deepest) / books.events } else { NONE }
-        },
-    },
-    Entry {
-        kind: Kind::VolumeHm3,
-        name: "shortage_of_an_event_hm3",
-        title: "mean shortage of an unbroken run of short days",
-        of: |books| if books.events > 0.0 { books.shortage_hm3 / books.events } else { NONE },
-    },
-    Entry {
-        kind: Kind::DayCount,
-        name: "longest_shortage_days",
-        title: "longest unbroken run of short days",
-        of: |books| books.longest_days,
-    },
+    Entry::new(Kind::Share, "years_without_shortage_share", "share of years without shortage", |books| {
+        1.0 - books.short_years / books.years
+    }),
+    Entry::new(Kind::Share, "resilience_share", "resilience", |books| {
+        if books.followed > 0.0 { books.recovered / books.followed } else { NONE }
+    }),
+    Entry::new(Kind::Share, "vulnerability_share", "vulnerability", |books| {
+        if books.events > 0.0 { (books.deepest + books.event_deepest) / books.events } else { NONE }
+    }),
+    Entry::new(
+        Kind::VolumeHm3,
+        "shortage_of_an_event_hm3",
+        "mean shortage of an unbroken run of short days",
+        |books| if books.events > 0.0 { books.shortage_hm3 / books.events } else { NONE },
+    ),
+    Entry::new(Kind::DayCount, "longest_shortage_days", "longest unbroken run of short days", |books| {
+        books.longest_days
+    }),
     NOT_FILLED,
 ];
 
@@ -112,43 +83,35 @@ pub enum Better {
 }
 
 /// What is told of every change of the rules, with the rules as stated among them, and which way it is better.
-const OF_CHANGES: [(Entry, Better); CHANGED] = [
+const OF_CHANGES: [(Entry<AllBooks>, Better); CHANGED] = [
     (RELIABILITY_OF_TIME, Better::More),
     (RELIABILITY_OF_VOLUME, Better::More),
     (
-        Entry {
-            kind: Kind::VolumeHm3,
-            name: "shortage_hm3",
-            title: "shortage a year",
-            of: |books| books.shortage_hm3 / books.years,
-        },
+        Entry::new(Kind::VolumeHm3, "shortage_hm3", "shortage a year", |books| {
+            books.shortage_hm3 / books.years
+        }),
         Better::Less,
     ),
     (
-        Entry {
-            kind: Kind::VolumeHm3,
-            name: "spill_hm3",
-            title: "spill a year",
-            of: |books| books.spill_hm3 / books.years,
-        },
+        Entry::new(Kind::VolumeHm3, "spill_hm3", "spill a year", |books| books.spill_hm3 / books.years),
         Better::Less,
     ),
     (
-        Entry {
-            kind: Kind::VolumeHm3,
-            name: "unused_hm3",
-            title: "water passed on unused a year, spill and release that nothing asked for",
-            of: |books| books.unused_hm3 / books.years,
-        },
+        Entry::new(
+            Kind::VolumeHm3,
+            "unused_hm3",
+            "water passed on unused a year, spill and release that nothing asked for",
+            |books| books.unused_hm3 / books.years,
+        ),
         Better::Less,
     ),
     (
-        Entry {
-            kind: Kind::DayCount,
-            name: "flood_space_encroached_days",
-            title: "days a year above the stated flood-space rule",
-            of: |books| books.encroached_days / books.years,
-        },
+        Entry::new(
+            Kind::DayCount,
+            "flood_space_encroached_days",
+            "days a year above the stated flood-space rule",
+            |books| books.encroached_days / books.years,
+        ),
         Better::Less,
     ),
     (NOT_FILLED, Better::Less),
@@ -159,16 +122,12 @@ pub const CHANGED: usize = 7;
 
 /// The measures of a whole realization.
 pub(super) fn list() -> Vec<Measure> {
-    ENTRIES.iter().map(measure).collect()
+    ENTRIES.iter().map(Entry::measure).collect()
 }
 
 /// The measures of every change of the rules, each with the way in which it is better.
 pub(super) fn list_of_changes() -> Vec<(Measure, Better)> {
-    OF_CHANGES.iter().map(|(entry, better)| (measure(entry), *better)).collect()
-}
-
-fn measure(of: &Entry) -> Measure {
-    Measure::new(of.kind, of.name, of.title)
+    OF_CHANGES.iter().map(|(entry, better)| (entry.measure(), *better)).collect()
 }
 
 impl AllBooks {
@@ -209,12 +168,12 @@ impl AllBooks {
 
     /// The measures of a whole realization.
     pub fn measures(&self) -> impl Iterator<Item = f64> + '_ {
-        ENTRIES.iter().map(|entry| (entry.of)(self))
+        ENTRIES.iter().map(|entry| entry.read(self))
     }
 
     /// The measures of every change of the rules.
     pub fn measures_of_changes(&self) -> [f64; CHANGED] {
-        OF_CHANGES.map(|(entry, _)| (entry.of)(self))
+        OF_CHANGES.map(|(entry, _)| entry.read(self))
     }
 }
 

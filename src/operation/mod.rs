@@ -7,6 +7,7 @@
 mod all_books;
 mod change;
 mod dates;
+mod entry;
 mod inflow_measures;
 mod plan;
 mod run;

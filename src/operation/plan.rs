@@ -1,12 +1,11 @@
 //! What is operated, and what is asked of it.
 
 use super::change::Change;
-use super::run::Operated;
 use super::{all_books, inflow_measures, year_books};
 use crate::calendar::{MonthDay, WaterYearStart};
 use crate::inflow::Routing;
 use crate::reservoir::Reservoir;
-use crate::season::{Measure, period_value};
+use crate::season::{Kind, Measure};
 use serde::Serialize;
 
 /// Dates and windows.
@@ -114,19 +113,9 @@ impl Operation {
         Self { changes: Vec::new(), ..self.clone() }
     }
 
-    /// Period values of [`Self::measures`] at one of so many levels of a realization.
-    pub fn period_values(&self, operated: &Operated, (level, levels): (usize, usize)) -> Vec<f64> {
-        let (yearly, over_years) = (self.yearly(), self.over_years().len());
-        let years = operated.years((level, levels), yearly.len());
-        let mut one = Vec::with_capacity(years.clone().count());
-        let of_years = yearly.iter().enumerate().map(|(at, measure)| {
-            one.clear();
-            one.extend(years.clone().map(|year| year[at]));
-            period_value(measure.kind, &mut one)
-        });
-        let mut values: Vec<f64> = of_years.collect();
-        values.extend(&operated.over_years[level * over_years..(level + 1) * over_years]);
-        values
+    /// What the numbers of [`Self::yearly`] count.
+    pub fn yearly_kinds(&self) -> Vec<Kind> {
+        self.yearly().iter().map(|measure| measure.kind).collect()
     }
 
     /// The rules as stated, and what else is tried; none without a reservoir.

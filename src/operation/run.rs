@@ -9,7 +9,7 @@ use super::year_books::YearBooks;
 use crate::calendar::COMMON_DATES;
 use crate::inflow::{Router, WaterYear};
 use crate::reservoir::{Day, OpenPool, Pool, Reservoir, step};
-use crate::season::Measure;
+use crate::season::{Kind, Measure, period_value};
 
 /// What a realization comes to.
 #[derive(Debug, Clone, PartialEq, Default)]
@@ -31,6 +31,21 @@ impl Operated {
     ) -> impl Iterator<Item = &[f64]> + Clone {
         let years = self.yearly.len() / (levels * measures);
         self.yearly.chunks_exact(measures).skip(level * years).take(years)
+    }
+
+    /// Period values of [`Operation::measures`] at one of so many levels; `kinds` are those of its yearly ones.
+    pub fn period_values(&self, (level, levels): (usize, usize), kinds: &[Kind]) -> Vec<f64> {
+        let years = self.years((level, levels), kinds.len());
+        let mut one = Vec::with_capacity(years.clone().count());
+        let of_years = kinds.iter().enumerate().map(|(at, kind)| {
+            one.clear();
+            one.extend(years.clone().map(|year| year[at]));
+            period_value(*kind, &mut one)
+        });
+        let mut values: Vec<f64> = of_years.collect();
+        let over_years = self.over_years.len() / levels;
+        values.extend(&self.over_years[level * over_years..(level + 1) * over_years]);
+        values
     }
 
     /// Puts more levels behind its own.

@@ -1,5 +1,6 @@
 //! What a year of storage comes to.
 
+use super::entry::Entry;
 use super::plan::OperationSettings;
 use crate::reservoir::{Day, Outcome, PoolLedger};
 use crate::season::{Kind, Measure, NOT_REACHED, name_of};
@@ -28,83 +29,43 @@ pub(super) struct YearBooks {
     pub evaporated_hm3: f64,
 }
 
-/// A measure of the books.
-struct Entry {
-    kind: Kind,
-    name: &'static str,
-    title: &'static str,
-    of: fn(&YearBooks) -> f64,
-}
-
-const ENTRIES: [Entry; 13] = [
-    Entry {
-        kind: Kind::VolumeHm3,
-        name: "storage_year_end_hm3",
-        title: "storage as the water year ends",
-        of: |books| books.storage_hm3,
-    },
-    Entry {
-        kind: Kind::VolumeHm3,
-        name: "storage_lowest_hm3",
-        title: "lowest storage",
-        of: |books| books.lowest_hm3,
-    },
-    Entry {
-        kind: Kind::ArrivalDay,
-        name: "fill_day",
-        title: "first day on which the reservoir is full",
-        of: |books| books.fill_day,
-    },
-    Entry { kind: Kind::VolumeHm3, name: "shortage_hm3", title: "shortage", of: |books| books.shortage_hm3 },
-    Entry {
-        kind: Kind::DayCount,
-        name: "shortage_days",
-        title: "days of shortage",
-        of: |books| books.short_days,
-    },
-    Entry { kind: Kind::VolumeHm3, name: "spill_hm3", title: "spill", of: |books| books.spill_hm3 },
-    Entry {
-        kind: Kind::VolumeHm3,
-        name: "unused_hm3",
-        title: "water passed on unused, spill and release that nothing asked for",
-        of: |books| books.unused_hm3,
-    },
-    Entry {
-        kind: Kind::VolumeHm3,
-        name: "release_hm3",
-        title: "release through the outlets",
-        of: |books| books.released_hm3,
-    },
-    Entry {
-        kind: Kind::VolumeHm3,
-        name: "release_for_flood_space_hm3",
-        title: "release for flood space",
-        of: |books| books.flood_hm3,
-    },
-    Entry {
-        kind: Kind::DayCount,
-        name: "flood_space_encroached_days",
-        title: "days above the stated flood-space rule",
-        of: |books| books.encroached_days,
-    },
-    Entry {
-        kind: Kind::VolumeHm3,
-        name: "flood_space_encroached_most_hm3",
-        title: "most storage above the stated flood-space rule",
-        of: |books| books.encroached_most_hm3,
-    },
-    Entry {
-        kind: Kind::DayCount,
-        name: "minimum_release_missed_days",
-        title: "days below the minimum release",
-        of: |books| books.missed_minimum_days,
-    },
-    Entry {
-        kind: Kind::VolumeHm3,
-        name: "evaporation_hm3",
-        title: "evaporation",
-        of: |books| books.evaporated_hm3,
-    },
+const ENTRIES: [Entry<YearBooks>; 13] = [
+    Entry::new(Kind::VolumeHm3, "storage_year_end_hm3", "storage as the water year ends", |books| {
+        books.storage_hm3
+    }),
+    Entry::new(Kind::VolumeHm3, "storage_lowest_hm3", "lowest storage", |books| books.lowest_hm3),
+    Entry::new(Kind::ArrivalDay, "fill_day", "first day on which the reservoir is full", |books| {
+        books.fill_day
+    }),
+    Entry::new(Kind::VolumeHm3, "shortage_hm3", "shortage", |books| books.shortage_hm3),
+    Entry::new(Kind::DayCount, "shortage_days", "days of shortage", |books| books.short_days),
+    Entry::new(Kind::VolumeHm3, "spill_hm3", "spill", |books| books.spill_hm3),
+    Entry::new(
+        Kind::VolumeHm3,
+        "unused_hm3",
+        "water passed on unused, spill and release that nothing asked for",
+        |books| books.unused_hm3,
+    ),
+    Entry::new(Kind::VolumeHm3, "release_hm3", "release through the outlets", |books| books.released_hm3),
+    Entry::new(Kind::VolumeHm3, "release_for_flood_space_hm3", "release for flood space", |books| {
+        books.flood_hm3
+    }),
+    Entry::new(
+        Kind::DayCount,
+        "flood_space_encroached_days",
+        "days above the stated flood-space rule",
+        |books| books.encroached_days,
+    ),
+    Entry::new(
+        Kind::VolumeHm3,
+        "flood_space_encroached_most_hm3",
+        "most storage above the stated flood-space rule",
+        |books| books.encroached_most_hm3,
+    ),
+    Entry::new(Kind::DayCount, "minimum_release_missed_days", "days below the minimum release", |books| {
+        books.missed_minimum_days
+    }),
+    Entry::new(Kind::VolumeHm3, "evaporation_hm3", "evaporation", |books| books.evaporated_hm3),
 ];
 
 /// The measures: storage on its dates, then the books'.
@@ -113,7 +74,7 @@ pub(super) fn list(settings: &OperationSettings) -> Vec<Measure> {
         let name = format!("storage_{}_hm3", name_of(day));
         Measure::new(Kind::VolumeHm3, name, format!("storage on {}", day.words()))
     });
-    on_dates.chain(ENTRIES.iter().map(|of| Measure::new(of.kind, of.name, of.title))).collect()
+    on_dates.chain(ENTRIES.iter().map(Entry::measure)).collect()
 }
 
 impl YearBooks {
@@ -164,7 +125,7 @@ impl YearBooks {
 
     /// The measures behind storage on its dates.
     pub fn measures(&self) -> impl Iterator<Item = f64> + '_ {
-        ENTRIES.iter().map(|entry| (entry.of)(self))
+        ENTRIES.iter().map(|entry| entry.read(self))
     }
 }
 

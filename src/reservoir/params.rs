@@ -195,3 +195,54 @@ impl Reservoir {
         }
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::calendar::MonthDay;
+
+    fn reservoir() -> Reservoir {
+        let point = |month, not_above_hm3| RulePoint { on: MonthDay::new(month, 1).unwrap(), not_above_hm3 };
+        Reservoir {
+            name: "Test pool".to_owned(),
+            capacity_hm3: 100.0,
+            dead_hm3: 5.0,
+            starting_hm3: 50.0,
+            release_capacity_hm3_per_day: 2.0,
+            minimum_release_hm3_per_day: [0.5; 12],
+            demand_hm3_per_day: Demand::OnTop([1.0; 12]),
+            flood_rule: vec![point(12, 60.0), point(6, 100.0)],
+            evaporation_hm3_per_day: [0.0; 12],
+            full_share: 0.99,
+        }
+    }
+
+    /// By hand: 1.6 in July on top of 0.5 are more than the outlets' 2; as a release in all they are not.
+    #[test]
+    fn more_than_the_outlets_pass_is_said() {
+        assert_eq!(reservoir().unlikely(), []);
+        let mut july = [1.0; 12];
+        july[6] = 1.6;
+        let said = Reservoir { demand_hm3_per_day: Demand::OnTop(july), ..reservoir() }.unlikely();
+        assert_eq!(said.len(), 1);
+        assert!(
+            said[0].why.starts_with("in July 2.10 hm3 a day are asked of it and its outlets pass 2.00"),
+            "{}",
+            said[0].why
+        );
+        assert_eq!(Reservoir { demand_hm3_per_day: Demand::InAll(july), ..reservoir() }.unlikely(), []);
+    }
+
+    /// By hand: a rule up to 98 never reaches 99 % of 100, and does reach 98 %.
+    #[test]
+    fn a_rule_that_never_lets_it_fill_is_said() {
+        let mut low = reservoir();
+        low.flood_rule[1].not_above_hm3 = 98.0;
+        assert!(
+            low.unlikely()[0].why.contains("never lets it hold more than 98 hm3"),
+            "{:?}",
+            low.unlikely()
+        );
+        assert_eq!(Reservoir { full_share: 0.98, ..low }.unlikely(), []);
+    }
+}

@@ -1,6 +1,6 @@
 //! Made-up inflow, storage and rules, and tests of the figures that draw them.
 
-use super::super::{FIGURES, Figure, Svg};
+use super::super::{FIGURES, Figure, Svg, cost_in_days_above};
 use super::studies::PLAIN as STUDY;
 use super::{Setting, assert_texts_apart, texts};
 use crate::calendar::{COMMON_DATES, MONTHS, MonthDay, WaterYearStart};
@@ -378,6 +378,15 @@ fn titles_say_what_less_shortage_costs() {
         title(slug, &Operated { brought_back: -0.4, ..PLAIN }),
         "At +2 °C, no date of refill that was tried makes shortage less than the 7.00 hm³ a year of the rules as stated"
     );
+}
+
+/// By hand: 0.6 days and 20 more for refill 30 days earlier, to whole days from ten on; other space for floods costs none here.
+#[test]
+fn what_a_change_costs_in_room_for_floods_is_said() {
+    let cost = |change| cost_in_days_above(&PLAIN.operations(), change, 2);
+    let said = " Storage would then stand above the stated flood-space rule on 21 days a year, 0.6 under the stated rules.";
+    assert_eq!(cost(Change::RefillMovedDays(-30)).as_deref(), Some(said));
+    assert_eq!(cost(Change::FloodSpaceTimes(0.5)), None);
 }
 
 /// By hand: years stray by 25 hm3 from a line that SWE moves by 50 hm3 to either side, so that 50²/(50² + 25²) = 80 % of the variance is
